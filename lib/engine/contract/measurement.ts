@@ -1,0 +1,63 @@
+import type { Finding } from './finding';
+
+/** One line of the error budget. `u` is null when the component cannot be estimated: unknown is never zero. */
+export interface BudgetLine {
+  readonly component: string;
+  /** Domain id, e.g. `E01`. */
+  readonly id: string;
+  /** Does it make U (numerical), or is it chosen / not known from the files (decides coverage only)? */
+  readonly group: 'computation' | 'coverage';
+  /** Standard uncertainty in the quantity's unit, at the worst claimed point. */
+  readonly u: number | null;
+  readonly note: string;
+}
+
+export interface MeasuredPoint {
+  /** The swept setting at this point, e.g. `{ totalMassMsun: 60 }`; empty for a single value. */
+  readonly at: Readonly<Record<string, number>>;
+  /** The reported value (route A), or null when not computable. */
+  readonly value: number | null;
+  readonly routes: { readonly A: number | null; readonly B: number | null };
+  /** U = 2 u_c of the computation alone (E01, E02, E17, rounding of the input). */
+  readonly expandedUncertainty: number | null;
+  readonly components?: Readonly<Record<string, number | null>>;
+  /** Lower bound only, and the like: qualifiers the verdict prints. */
+  readonly remarks?: readonly string[];
+}
+
+/** A curve to draw: plain numbers with units, thinned for the screen, never used for a verdict. */
+export interface Figure {
+  readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux';
+  readonly title: string;
+  readonly x: { readonly label: string; readonly unit: string; readonly scale: 'linear' | 'log'; readonly values: readonly number[] };
+  readonly series: readonly FigureSeries[];
+}
+export interface FigureSeries {
+  readonly label: string;
+  readonly unit: string;
+  /** Claimed traces are solid orange, recomputed dashed blue; bands are drawn filled. */
+  readonly role: 'claimed' | 'recomputed' | 'residual' | 'noise' | 'band-low' | 'band-high';
+  readonly axis: 'left' | 'right';
+  readonly scale: 'linear' | 'log';
+  readonly values: readonly (number | null)[];
+}
+
+/** A setting with the value that was used and how it came to be. */
+export interface UsedSetting {
+  readonly name: string;
+  readonly value: unknown;
+  readonly standing: 'declared' | 'assumed' | 'swept';
+  readonly unit?: string;
+}
+
+export interface Measurement {
+  readonly points: readonly MeasuredPoint[];
+  readonly budget: readonly BudgetLine[];
+  readonly findings: readonly Finding[];
+  /** Names of settings that took a house default and could change this value. */
+  readonly assumed: readonly string[];
+  readonly settings: readonly UsedSetting[];
+  /** Indices of the points at which route B ran (all up to ten; else ends, worst and eight spread). */
+  readonly routeBPoints: readonly number[];
+  readonly figures: readonly Figure[];
+}

@@ -1,0 +1,73 @@
+import type { Finding } from './finding';
+import type { Measurement } from './measurement';
+import type { NoiseCurve } from './noise-curve';
+import type { DeclaredSettings, SettingName } from './settings';
+import type { Waveform } from './waveform';
+
+/** The roles of a claim's `of`, each resolved to what the sheet names. */
+export interface QuantityInputs {
+  readonly of: { readonly a?: Waveform; readonly b?: Waveform };
+  readonly noise: NoiseCurve | null;
+}
+
+export interface MeasureRequest {
+  readonly claimId: string;
+  readonly inputs: QuantityInputs;
+  readonly settings: DeclaredSettings;
+  /** The swept setting and its values, or null for a single value. */
+  readonly over: { readonly setting: SettingName; readonly values: readonly number[] } | null;
+  /** Claimed values by point, for choosing the worst point; null entries for inequalities. */
+  readonly claimed: readonly (number | null)[];
+  /** Figures cost time; the command line with --json does not ask for them. */
+  readonly withFigures: boolean;
+}
+
+/** How a long measurement tells what it does and is told to stop; pure, injected. */
+export interface Watch {
+  readonly onProgress: (fraction: number, doing: string) => void;
+  readonly cancelled: () => boolean;
+}
+
+export class Cancelled extends Error {
+  constructor() {
+    super('cancelled');
+  }
+}
+
+/** Tolerance on the linear scale, or on ln (a fraction). */
+export type ToleranceScale = 'absolute' | 'ln';
+
+/**
+ * One claim quantity: a row of the one table from which the sheet's schema, the composer's
+ * form, the plots and the methods page are drawn. Adding a quantity is one file, one page, one test.
+ */
+export interface Quantity {
+  readonly id: string;
+  readonly title: string;
+  readonly symbol: string;
+  /** Printed after the number; empty for dimensionless. */
+  readonly unit: string;
+  readonly roles: readonly ('a' | 'b')[];
+  readonly needsNoise: boolean;
+  readonly settings: readonly SettingName[];
+  /** Settings that have no default for this quantity given these inputs. */
+  readonly required: (inputs: QuantityInputs, declared: DeclaredSettings, over: SettingName | null) => readonly SettingName[];
+  readonly sweepable: readonly SettingName[];
+  readonly scale: ToleranceScale;
+  /** Natural tolerance at a claimed (or, for inequalities, recomputed) value, in the quantity's unit. */
+  readonly naturalTolerance: (value: number) => number;
+  /** KaTeX source of the formula as used. */
+  readonly formula: string;
+  readonly measure: (request: MeasureRequest, watch: Watch) => Measurement;
+}
+
+/** A stop: the quantity cannot be computed; the findings say why. */
+export const notComputable = (findings: readonly Finding[], points: readonly Readonly<Record<string, number>>[]): Measurement => ({
+  points: points.map((at) => ({ at, value: null, routes: { A: null, B: null }, expandedUncertainty: null })),
+  budget: [],
+  findings,
+  assumed: [],
+  settings: [],
+  routeBPoints: [],
+  figures: [],
+});

@@ -1,0 +1,80 @@
+import type { NoiseCurve } from './noise-curve';
+import type { MaximiseOver, Response } from './settings';
+import type { Waveform } from './waveform';
+
+/**
+ * The taper as numbers (settings.md rule 2.4): both routes read the same definition and
+ * evaluate it on their own grids. Times in the waveform's own unit; null = that end is quiet.
+ */
+export interface TaperWindow {
+  readonly start: { readonly from: number; readonly to: number } | null;
+  readonly end: { readonly from: number; readonly to: number } | null;
+}
+
+/** One waveform as it enters one inner product. */
+export interface Side {
+  /** Modes completed (mirror) and restricted to those in use; rule 2.3. */
+  readonly waveform: Waveform;
+  readonly taper: TaperWindow;
+  /** Seconds per unit of the axis (GM(1+z)/c³ for M; M/M₀ or 1 for seconds). */
+  readonly secondsPerUnit: number;
+  /** Strain per unit of amplitude: (GM/c²)/D for rh/M; (M/M₀)(D₀/D) or 1 for physical strain. */
+  readonly strainPerUnit: number;
+  /** Line of sight; ignored for line-of-sight content. */
+  readonly inclinationRad: number;
+  readonly azimuthRad: number;
+}
+
+export interface Band {
+  readonly noise: NoiseCurve;
+  /** Exact edges of the integral in Hz. */
+  readonly fLowHz: number;
+  readonly fHighHz: number;
+}
+
+/** 4 Re ∫ of the plus and cross strain along the line of sight, dimensionless (SNR²). */
+export interface ResponseGram {
+  readonly plusPlus: number;
+  readonly crossCross: number;
+  readonly plusCross: number;
+}
+
+export interface MatchOutcome {
+  readonly match: number;
+  /** 1 − match as ½‖â − b̂‖², computed without cancellation. */
+  readonly mismatch: number;
+  /** b must be moved by this, later > 0. */
+  readonly timeShiftS: number;
+  readonly phaseShiftRad: number;
+  /** b's inclination and the factor on b's mass, when maximised over. */
+  readonly inclinationRad?: number;
+  readonly massFactor?: number;
+  /** A maximum on a bound of the mass range is a lower bound only. */
+  readonly onBound?: boolean;
+}
+
+export interface MatchRequest {
+  readonly a: Side;
+  readonly b: Side;
+  readonly band: Band;
+  readonly response: Response;
+  readonly maximise: readonly MaximiseOver[];
+  readonly templateMassRange: readonly [number, number];
+  /** Rebuilds b at a factor of its mass, for templateMass. */
+  readonly rescale: (b: Side, factor: number) => Side;
+}
+
+/**
+ * What a route can do. Routes A and B implement this by different numerics: they share the
+ * parsed samples, the closed forms (harmonics, noise rule, taper window), and nothing else.
+ */
+export interface DetectorRoute {
+  readonly name: 'A' | 'B';
+  readonly gram: (side: Side, band: Band) => ResponseGram;
+  /** Σ over modes of 2∫_{−∞}^{∞}|h̃_ℓm|²/S(|f|) df, band-limited in |f|, in strain units (rule 2.8); modes only. */
+  readonly modePower: (side: Side, band: Band) => number;
+  readonly overlap: (a: Side, b: Side, band: Band, response: Response) => number;
+  readonly match: (request: MatchRequest) => MatchOutcome;
+  /** ‖a − b aligned‖² with actual amplitudes, for `rhoWithAmplitude`. */
+  readonly residualPower: (request: MatchRequest, at: MatchOutcome) => number;
+}

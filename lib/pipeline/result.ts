@@ -1,0 +1,55 @@
+import type { BudgetLine, Figure, MeasuredPoint, UsedSetting } from '@/lib/engine/contract/measurement';
+import type { Finding } from '@/lib/engine/contract/finding';
+
+/** `counterfoil-result/1`: what one run says about one sheet. Field names are the open contract. */
+export type VerdictWord = 'agrees' | 'differs' | 'unsettled' | 'not-computable' | 'routes-disagree';
+
+export type Claimed =
+  | { readonly kind: 'value'; readonly value: number; readonly uncertainty: number | null; readonly digits: number | null; readonly printed: string }
+  | { readonly kind: 'above' | 'below'; readonly bound: number; readonly printed: string };
+
+export interface Coverage {
+  readonly state: 'covered' | 'understated' | 'unknown';
+  /** Budget components that the files cannot give. */
+  readonly missing?: readonly string[];
+  /** How many times too small the stated uncertainty is. */
+  readonly factor?: number;
+}
+
+export interface ResultPoint extends Omit<MeasuredPoint, 'remarks'> {
+  readonly claimed: number | { readonly above: number } | { readonly below: number };
+  /** As the author printed it, e.g. `0.9984(3)`. */
+  readonly printed: string;
+  /** T: declared (or natural) tolerance plus half a unit of the last printed digit; null for a bound. */
+  readonly tolerance: number | null;
+  /** recomputed − claimed (or its ln on that scale). */
+  readonly apart: number | null;
+  readonly verdict: VerdictWord;
+}
+
+export interface ResultClaim {
+  readonly id: string;
+  readonly quantity: string;
+  readonly unit: string;
+  readonly verdict: VerdictWord;
+  readonly remarks: readonly string[];
+  readonly coverage: Coverage;
+  readonly points: readonly ResultPoint[];
+  readonly budget: readonly BudgetLine[];
+  readonly assumed: readonly string[];
+  readonly settings: readonly UsedSetting[];
+  readonly routeB: readonly number[];
+  readonly findings: readonly Finding[];
+  readonly candidates: readonly never[];
+}
+
+export interface ResultDocument {
+  readonly format: 'counterfoil-result/1';
+  readonly engine: string;
+  readonly title: string;
+  readonly files: readonly { readonly name: string; readonly bytes: number; readonly sha256: string }[];
+  readonly claims: readonly ResultClaim[];
+}
+
+/** Figures travel beside the result, keyed by claim id: they are for eyes, not for the record. */
+export type FiguresByClaim = Readonly<Record<string, readonly Figure[]>>;
