@@ -1,0 +1,1 @@
+export function freePort(first: number, taken?: Set<number>): Promise<number>;
