@@ -1,0 +1,60 @@
+import { isFiniteNumber } from '@/lib/kernel/finite';
+import type { ResultDocument, ResultPoint } from '@/lib/pipeline/result';
+
+/** The number a thread hangs on: a claim, and one point of it where the claim is a sweep. */
+export interface Anchor {
+  readonly claim: string;
+  /** The swept setting at the point, e.g. `{ totalMassMsun: 60 }`; null for the claim as a whole. */
+  readonly at: Readonly<Record<string, number>> | null;
+}
+
+/** What the number was when the thread was opened; kept, so that a later revision can say what changed. */
+export interface AnchoredNumber {
+  readonly printed: string | null;
+  readonly value: number | null;
+}
+
+export type ReAnchoring =
+  | { readonly standing: 'same' }
+  | { readonly standing: 'changed'; readonly was: AnchoredNumber; readonly now: AnchoredNumber }
+  | { readonly standing: 'lost'; readonly was: AnchoredNumber };
+
+/** Abscissae travel through decimal text, so equality is to nine digits and not to the bit. */
+const ABSCISSA_TOLERANCE = 1e-9;
+
+function samePlace(a: Readonly<Record<string, number>>, b: Readonly<Record<string, number>>): boolean {
+  const keys = Object.keys(a);
+  if (keys.length !== Object.keys(b).length) return false;
+  return keys.every((key) => {
+    const x = a[key];
+    const y = b[key];
+    if (!isFiniteNumber(x) || !isFiniteNumber(y)) return false;
+    return Math.abs(x - y) <= ABSCISSA_TOLERANCE * Math.max(Math.abs(x), Math.abs(y));
+  });
+}
+
+const numberOf = (point: ResultPoint): AnchoredNumber => ({ printed: point.printed, value: point.value });
+
+/**
+ * The number under an anchor, or undefined when the result has no such place. A claim of one
+ * point is its own whole, so an anchor without `at` finds it.
+ */
+export function findAnchoredNumber(result: ResultDocument, anchor: Anchor): AnchoredNumber | undefined {
+  const claim = result.claims.find((c) => c.id === anchor.claim);
+  if (!claim) return undefined;
+  const { at } = anchor;
+  if (at !== null && Object.keys(at).length > 0) {
+    const point = claim.points.find((p) => samePlace(p.at, at));
+    return point ? numberOf(point) : undefined;
+  }
+  const only = claim.points.length === 1 ? claim.points[0] : undefined;
+  return only ? numberOf(only) : { printed: null, value: null };
+}
+
+/** Where a thread stands in a newer result. Lost anchors are listed, never dropped. */
+export function reAnchor(anchor: Anchor, was: AnchoredNumber, result: ResultDocument): ReAnchoring {
+  const now = findAnchoredNumber(result, anchor);
+  if (!now) return { standing: 'lost', was };
+  const same = Object.is(now.value, was.value) && now.printed === was.printed;
+  return same ? { standing: 'same' } : { standing: 'changed', was, now };
+}
