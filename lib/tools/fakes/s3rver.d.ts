@@ -1,0 +1,17 @@
+declare module 's3rver' {
+  import type { AddressInfo } from 'node:net';
+  export default class S3rver {
+    constructor(options: { address?: string; port?: number; silent?: boolean; directory?: string; vhostBuckets?: boolean });
+    run(): Promise<AddressInfo>;
+    close(): Promise<void>;
+    httpServer?: import('node:http').Server;
+  }
+}
+declare module 's3rver/lib/models/account.js' {
+  interface Account {
+    createKeyPair(accessKeyId: string, secretAccessKey: string): void;
+    revokeAccessKey(accessKeyId: string): void;
+  }
+  const models: { DUMMY_ACCOUNT: Account };
+  export default models;
+}
