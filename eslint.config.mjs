@@ -1,0 +1,27 @@
+import { defineConfig, globalIgnores } from 'eslint/config';
+import nextVitals from 'eslint-config-next/core-web-vitals';
+import nextTypeScript from 'eslint-config-next/typescript';
+import prettier from 'eslint-config-prettier/flat';
+
+export default defineConfig([
+  ...nextVitals,
+  ...nextTypeScript,
+  prettier,
+  globalIgnores(['.next/', '.data/', 'node_modules/', 'next-env.d.ts', 'drizzle/']),
+  {
+    rules: {
+      eqeqeq: ['error', 'always', { null: 'ignore' }],
+      'no-console': 'off',
+      'no-self-compare': 'error',
+      'prefer-const': 'error',
+      'no-restricted-imports': ['error', { paths: [{ name: 'h5wasm/node', message: 'It lets an uploaded file read the host; import plain h5wasm.' }] }],
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
+      '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
+    },
+  },
+  {
+    files: ['**/*.{ts,tsx}'],
+    ignores: ['lib/engine/**'],
+    rules: { '@typescript-eslint/no-non-null-assertion': 'error' },
+  },
+]);
