@@ -1,0 +1,13 @@
+'use client';
+import Link from 'next/link';
+import type { Route } from 'next';
+import { usePathname } from 'next/navigation';
+import type { ReactNode } from 'react';
+
+const look = 'flex min-h-9 items-center rounded px-3 py-2 text-ink-2 no-underline hover:bg-hover hover:text-ink aria-[current]:rounded-none aria-[current]:font-semibold aria-[current]:text-ink aria-[current]:shadow-[inset_0_-2px_var(--link)]';
+
+export function NavLink({ href, children }: { readonly href: string; readonly children: ReactNode }) {
+  const path = usePathname();
+  const current = path === href ? ('page' as const) : path.startsWith(`${href}/`) ? ('true' as const) : undefined;
+  return <Link href={href as Route} className={look} aria-current={current}>{children}</Link>;
+}
