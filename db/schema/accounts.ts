@@ -1,8 +1,6 @@
 import { bigint, boolean, check, index, integer, pgTable, text, unique, uuid } from 'drizzle-orm/pg-core';
+import { ACCOUNT_ROLES, type AccountRole } from '../../lib/policy/account-role';
 import { moment, oneOf, randomId } from './columns';
-
-export const ACCOUNT_ROLES = ['member', 'editor', 'administrator'] as const;
-export type AccountRole = (typeof ACCOUNT_ROLES)[number];
 
 /**
  * One person with an account. A row is never deleted while anything bears their name.
