@@ -1,4 +1,4 @@
-import { check, customType, index, integer, pgTable, text, uuid } from 'drizzle-orm/pg-core';
+import { check, customType, index, integer, pgTable, text, unique, uuid } from 'drizzle-orm/pg-core';
 import { RECORD_STANDINGS, type RecordStanding } from '../../lib/badges/standing';
 import { moment, oneOf, randomId } from './columns';
 import { decisions } from './decisions';
@@ -36,7 +36,7 @@ export const records = pgTable(
       .references(() => signingKeys.id, { onDelete: 'restrict' }),
     enteredAt: moment('entered_at').notNull().defaultNow(),
   },
-  (t) => [index('records_submission_idx').on(t.submissionId, t.revision), index('records_entered_idx').on(t.enteredAt)],
+  (t) => [unique('records_one_per_revision').on(t.submissionId, t.revision), index('records_entered_idx').on(t.enteredAt)],
 );
 
 /** A public key that has signed or may sign. Append-only: a key that is no longer used stays published. */

@@ -7,8 +7,8 @@ export interface Caution {
 }
 
 const TEXTS: Readonly<Record<number, string>> = {
-  1: 'Verified means: this number follows from these files and these settings, within this tolerance, by this engine version. It does not mean that the simulation solves the right equations accurately, that the source exists, that the noise curve is the detector’s, or that the conclusion drawn is right.',
-  2: 'Recomputing from the author’s own files is not an independent simulation. Only the mark second data set says so.',
+  1: "Verified means: this number follows from these files and these settings, within this tolerance, by this engine version. It does not mean that the simulation solves the right equations accurately, that the source exists, that the noise curve is the detector's, or that the conclusion drawn is right.",
+  2: "Recomputing from the author's own files is not an independent simulation. Only the mark second data set says so.",
   3: 'Agreement of our two routes excludes slips of calculation, not a shared wrong convention; conventions are printed with each number.',
   4: 'A suggested explanation is a hypothesis; with enough alternatives something always fits. The number of alternatives and the chance rate are part of the result.',
   5: 'A match describes similarity for one noise curve, band, mass, and set of maximisations. It is no statement about other detectors, masses, orientations.',

@@ -73,6 +73,7 @@ function unsettled(facts: QueueFacts, now: string): QueuePlace | undefined {
 }
 
 const inTriage: Placer = (facts, now) => {
+  if (facts.editorName === null) return place(now, 'assign', 'take', 'nobody has taken it', editor(facts), facts.stateSince, CLOCK_DAYS.triage);
   const asked = facts.referees.filter((r) => r.state === 'asked');
   if (accepted(facts).length > 0) return place(now, 'assign', 'send-to-review', `${names(accepted(facts))} ready`, editor(facts), facts.stateSince, CLOCK_DAYS.triage);
   if (asked.length === 0) return place(now, 'assign', 'assign', 'no referee asked', editor(facts), facts.stateSince, CLOCK_DAYS.triage);
@@ -104,10 +105,7 @@ const withAuthors: Placer = (facts, now) => {
   return place(now, over ? 'chase' : 'waiting', over ? 'remind' : 'open', 'revision asked', 'Authors', facts.stateSince, CLOCK_DAYS.revision);
 };
 
-const lodged: Placer = (facts, now) =>
-  facts.run === 'finished'
-    ? place(now, 'assign', 'take', 'nobody has taken it', editor(facts), facts.stateSince, CLOCK_DAYS.triage)
-    : place(now, 'waiting', 'open', 'being computed', 'Machine', facts.stateSince, CLOCK_DAYS.checking);
+const lodged: Placer = (facts, now) => place(now, 'waiting', 'open', 'being computed', 'Machine', facts.stateSince, CLOCK_DAYS.checking);
 
 const PLACERS: Partial<Record<SubmissionState, Placer>> = {
   lodged,
