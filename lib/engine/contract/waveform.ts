@@ -11,6 +11,11 @@ export interface Mode {
   readonly m: number;
   readonly re: Float64Array;
   readonly im: Float64Array;
+  /**
+   * Frequency domain only: the samples are H̃(−f) against the positive axis. Set on partners made
+   * by the mirror rule, whose content lies at −f; a mode as given has content at +f alone.
+   */
+  readonly atNegativeFrequencies?: true;
 }
 
 export interface ModeSet {
