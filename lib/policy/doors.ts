@@ -1,0 +1,36 @@
+import type { AccountAction, SubmissionAction } from './actions';
+
+/** What a door asks of policy. `own-session` doors concern nobody but the caller's own sign-in. */
+export type DoorPolicy = SubmissionAction | AccountAction | 'own-session' | 'anyone';
+
+/**
+ * Every way in: route handlers (`METHOD /path`), server actions (`action file.name`) and pages
+ * (`page /path`), each with what it asks of policy. A door that is not here does not compile in the
+ * wrappers, and the matrix test fails for a file under `app` that is not here.
+ */
+export const DOORS = {
+  'GET /api/health/live': ['anyone'],
+  'GET /api/health/ready': ['anyone'],
+  'GET /api/auth/*': ['own-session'],
+  'POST /api/auth/*': ['own-session'],
+  'GET /api/v1/submissions': ['submission.list-own'],
+  'POST /api/v1/submissions': ['submission.create'],
+  'GET /api/v1/submissions/{id}': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'GET /api/v1/submissions/{id}/runs': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'GET /api/v1/submissions/{id}/events': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'GET /api/v1/submissions/{id}/sheet': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'GET /api/v1/submissions/{id}/files/{fileId}': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'GET /api/v1/submissions/{id}/figures': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'POST /api/v1/submissions/{id}/files': ['submission.edit'],
+  'DELETE /api/v1/submissions/{id}/files': ['submission.edit'],
+  'PATCH /api/v1/submissions/{id}': ['submission.edit'],
+  'POST /api/v1/submissions/{id}/check': ['submission.check'],
+  'POST /api/v1/submissions/{id}/lodge': ['submission.lodge'],
+  'POST /api/v1/submissions/{id}/withdraw': ['submission.withdraw'],
+  'POST /api/v1/submissions/{id}/revise': ['submission.revise'],
+  'GET /api/v1/submissions/{id}/variations': ['submission.vary'],
+  'POST /api/v1/submissions/{id}/variations': ['submission.vary'],
+} as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;
+
+/** Reviews and pages add theirs in their own files; the test reads all tables. */
+export type Door = keyof typeof DOORS | (string & {});
