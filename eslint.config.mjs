@@ -14,7 +14,10 @@ export default defineConfig([
       'no-console': 'off',
       'no-self-compare': 'error',
       'prefer-const': 'error',
-      'no-restricted-imports': ['error', { paths: [{ name: 'h5wasm/node', message: 'It lets an uploaded file read the host; import plain h5wasm.' }] }],
+      'no-restricted-imports': [
+        'error',
+        { paths: [{ name: 'h5wasm/node', message: 'It lets an uploaded file read the host; import plain h5wasm.' }] },
+      ],
       '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_' }],
       '@typescript-eslint/consistent-type-imports': ['error', { fixStyle: 'inline-type-imports' }],
     },

@@ -8,11 +8,15 @@ const EVERYWHERE = [
   { key: 'Referrer-Policy', value: 'same-origin' },
   { key: 'Cross-Origin-Opener-Policy', value: 'same-origin' },
   { key: 'Permissions-Policy', value: 'camera=(), microphone=(), geolocation=(), payment=(), usb=()' },
-  ...(process.env['APP_URL']?.startsWith('https:') ? [{ key: 'Strict-Transport-Security', value: 'max-age=63072000; includeSubDomains' }] : []),
+  ...(process.env['APP_URL']?.startsWith('https:')
+    ? [{ key: 'Strict-Transport-Security', value: 'max-age=63072000; includeSubDomains' }]
+    : []),
 ];
 
 /** Files and API answers load nothing, should a browser ever be talked into showing one. */
-const NOTHING_LOADS = [{ key: 'Content-Security-Policy', value: "default-src 'none'; frame-ancestors 'none'; base-uri 'none'; form-action 'none'" }];
+const NOTHING_LOADS = [
+  { key: 'Content-Security-Policy', value: "default-src 'none'; frame-ancestors 'none'; base-uri 'none'; form-action 'none'" },
+];
 
 const config: NextConfig = {
   poweredByHeader: false,

@@ -22,9 +22,15 @@ const secret = (atLeast: number) =>
   z
     .string()
     .min(atLeast, `expected at least ${atLeast} random characters`)
-    .refine((text) => !isWellKnown(text) && new Set(text).size > 5, 'expected a generated value, for example from `openssl rand -base64 33`');
+    .refine(
+      (text) => !isWellKnown(text) && new Set(text).size > 5,
+      'expected a generated value, for example from `openssl rand -base64 33`',
+    );
 
-const flag = z.enum(['0', '1']).default('0').transform((text) => text === '1');
+const flag = z
+  .enum(['0', '1'])
+  .default('0')
+  .transform((text) => text === '1');
 
 const place = {
   NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),

@@ -29,7 +29,10 @@ export class ObjectMissing extends Error {
 
 /** The stream ended before or after the size its sender had declared. */
 export class SizeDiffers extends Error {
-  constructor(readonly saw: number, readonly declared: number) {
+  constructor(
+    readonly saw: number,
+    readonly declared: number,
+  ) {
     super(`${saw} bytes arrived; the sender declared ${declared}`);
   }
 }

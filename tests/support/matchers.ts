@@ -24,7 +24,8 @@ function requireFinite(value: unknown, what: string): asserts value is number {
 
 function allowed(tolerance: Tolerance | number, expected: number): number {
   if (typeof tolerance === 'number') return tolerance;
-  if (tolerance.absolute === undefined && tolerance.relative === undefined) throw new Error('toAgreeWith needs an absolute or a relative tolerance');
+  if (tolerance.absolute === undefined && tolerance.relative === undefined)
+    throw new Error('toAgreeWith needs an absolute or a relative tolerance');
   return (tolerance.absolute ?? 0) + (tolerance.relative ?? 0) * Math.abs(expected);
 }
 

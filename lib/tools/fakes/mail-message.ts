@@ -43,7 +43,10 @@ function splitMessage(raw: string): { headers: Record<string, string>; body: str
 function textOf(headers: Record<string, string>, body: string): string {
   const boundary = /boundary="?([^";]+)"?/i.exec(headers['content-type'] ?? '')?.[1];
   if (!boundary) return decodeBody(body, headers['content-transfer-encoding'] ?? '7bit');
-  const parts = body.split(`--${boundary}`).slice(1).map((part) => splitMessage(part.replace(/^\r\n/, '')));
+  const parts = body
+    .split(`--${boundary}`)
+    .slice(1)
+    .map((part) => splitMessage(part.replace(/^\r\n/, '')));
   const text = parts.find((part) => /^text\/plain/i.test(part.headers['content-type'] ?? 'text/plain'));
   return text ? textOf(text.headers, text.body) : '';
 }

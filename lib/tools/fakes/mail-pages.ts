@@ -15,21 +15,37 @@ const page = (title: string, body: string): string =>
   `<!doctype html><html lang="en"><head><meta charset="utf-8"><meta name="viewport" content="width=device-width"><title>${escapeHtml(title)}</title><link rel="stylesheet" href="/style.css"></head><body><main>${body}</main></body></html>`;
 
 export function listPage(letters: readonly ReceivedMail[]): string {
-  const rows = letters.toReversed().map(
-    (letter) =>
-      `<li><a href="/messages/${letter.id}">${escapeHtml(letter.subject || '(no subject)')}</a><br><span class="quiet">to ${escapeHtml(letter.to.join(', '))} · ${escapeHtml(letter.receivedAt)}</span></li>`,
+  const rows = letters
+    .toReversed()
+    .map(
+      (letter) =>
+        `<li><a href="/messages/${letter.id}">${escapeHtml(letter.subject || '(no subject)')}</a><br><span class="quiet">to ${escapeHtml(letter.to.join(', '))} · ${escapeHtml(letter.receivedAt)}</span></li>`,
+    );
+  const list =
+    rows.length > 0
+      ? `<ol>${rows.join('')}</ol>`
+      : '<p>No letter has been sent yet. Ask for a password reset, or invite a referee, and it will be here.</p>';
+  return page(
+    'Letters of the demo',
+    `<h1>Letters of the demo</h1><p class="quiet">Every letter this copy of Counterfoil sends ends here. Nothing leaves this machine.</p>${list}`,
   );
-  const list = rows.length > 0 ? `<ol>${rows.join('')}</ol>` : '<p>No letter has been sent yet. Ask for a password reset, or invite a referee, and it will be here.</p>';
-  return page('Letters of the demo', `<h1>Letters of the demo</h1><p class="quiet">Every letter this copy of Counterfoil sends ends here. Nothing leaves this machine.</p>${list}`);
 }
 
 export function letterPage(letter: ReceivedMail): string {
   const fact = (name: string, value: string): string => `<dt>${name}</dt><dd>${escapeHtml(value)}</dd>`;
-  const facts = fact('From', letter.headers['from'] ?? letter.from) + fact('To', letter.to.join(', ')) + fact('Received (UTC)', letter.receivedAt) + fact('Message-ID', letter.messageId);
-  return page(letter.subject, `<p><a href="/">All letters</a></p><h1>${escapeHtml(letter.subject || '(no subject)')}</h1><dl>${facts}</dl><pre>${linked(escapeHtml(letter.text))}</pre>`);
+  const facts =
+    fact('From', letter.headers['from'] ?? letter.from) +
+    fact('To', letter.to.join(', ')) +
+    fact('Received (UTC)', letter.receivedAt) +
+    fact('Message-ID', letter.messageId);
+  return page(
+    letter.subject,
+    `<p><a href="/">All letters</a></p><h1>${escapeHtml(letter.subject || '(no subject)')}</h1><dl>${facts}</dl><pre>${linked(escapeHtml(letter.text))}</pre>`,
+  );
 }
 
 export const missingPage = (): string => page('No such letter', '<h1>No such letter</h1><p><a href="/">All letters</a></p>');
 
 /** Works on escaped text: an address ends before any entity, so nothing can close the attribute. */
-const linked = (escaped: string): string => escaped.replace(/https?:\/\/(?:[^\s<>&]|&amp;)+/g, (address) => `<a href="${address}">${address}</a>`);
+const linked = (escaped: string): string =>
+  escaped.replace(/https?:\/\/(?:[^\s<>&]|&amp;)+/g, (address) => `<a href="${address}">${address}</a>`);

@@ -20,7 +20,13 @@ export async function startObjectStoreFake(options: {
   mkdirSync(options.folder, { recursive: true });
   accounts.DUMMY_ACCOUNT.revokeAccessKey('S3RVER');
   accounts.DUMMY_ACCOUNT.createKeyPair(options.accessKeyId, options.secretAccessKey);
-  const server = new S3rver({ address: '127.0.0.1', port: options.port ?? 0, silent: true, directory: options.folder, vhostBuckets: false });
+  const server = new S3rver({
+    address: '127.0.0.1',
+    port: options.port ?? 0,
+    silent: true,
+    directory: options.folder,
+    vhostBuckets: false,
+  });
   const { port } = await server.run();
   return {
     endpoint: `http://127.0.0.1:${port}`,

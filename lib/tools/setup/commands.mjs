@@ -1,18 +1,25 @@
-import { spawnSync } from 'node:child_process';
+import { spawn, spawnSync } from 'node:child_process';
 import { ROOT, SetupError, isRoot } from './ground.mjs';
 
-/** Runs a command with our own output and refuses to go on when it does not end well. */
-export function must(command, args, options = {}) {
-  const done = spawnSync(command, args, { stdio: 'inherit', cwd: ROOT, ...options });
-  if (done.error) throw new SetupError(`${command}: ${done.error.message}`);
-  if (done.status !== 0)
-    throw new SetupError(`${command} ${args.slice(0, 3).join(' ')} ended with ${done.status ?? done.signal}`);
+const running = new Set();
+
+/** Runs one step with our own output; refuses to go on when it does not end well. */
+export async function runStep(command, args, { env = process.env, quiet = false } = {}) {
+  const step = spawn(command, args, { cwd: ROOT, env, stdio: ['ignore', quiet ? 'ignore' : 'inherit', 'inherit'] });
+  running.add(step);
+  const ended = await new Promise((resolve) => {
+    step.once('error', (error) => resolve(error.message));
+    step.once('exit', (code, signal) => resolve(code ?? signal));
+  });
+  running.delete(step);
+  if (ended !== 0) throw new SetupError(`${[command, ...args.slice(0, 3)].join(' ')} ended with ${ended}`);
 }
 
+/** A step in progress would keep us alive after Ctrl-C. */
+export const stopSteps = () => running.forEach((step) => step.kill('SIGTERM'));
+
 /** `npm ci` inside `npm start` must not inherit the outer command's npm_config_* and npm_lifecycle_*. */
-export function withoutNpmVariables(env) {
-  return Object.fromEntries(Object.entries(env).filter(([name]) => !/^npm_/i.test(name)));
-}
+export const withoutNpmVariables = (env) => Object.fromEntries(Object.entries(env).filter(([name]) => !/^npm_/i.test(name)));
 
 const idOf = (...args) => spawnSync('id', args, { encoding: 'utf8' }).stdout.trim();
 export const userName = (uid) => idOf('-nu', String(uid)) || String(uid);

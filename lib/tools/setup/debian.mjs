@@ -21,8 +21,6 @@ export function ensureChromium() {
   if (!fs.existsSync(CHROMIUM)) installFromDebian(['chromium'], 'Chromium (for the browser tests)');
 }
 
-const passwordlessSudo = () =>
-  spawnSync('sudo', ['-n', 'true'], { stdio: 'ignore' }).status === 0 ? ['sudo', '-n'] : null;
+const passwordlessSudo = () => (spawnSync('sudo', ['-n', 'true'], { stdio: 'ignore' }).status === 0 ? ['sudo', '-n'] : null);
 
-const oneCommand = (packages) =>
-  `Run once as root:\n  apt-get update && apt-get install -y --no-install-recommends ${packages.join(' ')}`;
+const oneCommand = (packages) => `Run once as root:\n  apt-get update && apt-get install -y --no-install-recommends ${packages.join(' ')}`;

@@ -6,10 +6,6 @@ export interface RunningPostgres {
   readonly adminUrl: string;
   stop(): void;
 }
-export function startPostgres(options: {
-  folder: string;
-  password: string;
-  firstPort?: number;
-  fast?: boolean;
-}): Promise<RunningPostgres>;
+export function ensurePostgres(): unknown;
+export function startPostgres(options: { folder: string; password: string; firstPort?: number; fast?: boolean }): Promise<RunningPostgres>;
 export function roleUrl(role: string, password: string, port: number, database: string): string;

@@ -53,7 +53,13 @@ describe('an upload holds a few parts in memory, however large the file', () => 
         for (const chunk = Buffer.alloc(64 * 1024); produced < 400 * MIB; produced += chunk.length) yield chunk;
       })(),
     );
-    const store = createS3Store({ S3_ENDPOINT: endpoint, S3_REGION: 'us-east-1', S3_BUCKET: 'bucket', S3_ACCESS_KEY_ID: 'key', S3_SECRET_ACCESS_KEY: 'unused-secret-of-a-test' });
+    const store = createS3Store({
+      S3_ENDPOINT: endpoint,
+      S3_REGION: 'us-east-1',
+      S3_BUCKET: 'bucket',
+      S3_ACCESS_KEY_ID: 'key',
+      S3_SECRET_ACCESS_KEY: 'unused-secret-of-a-test',
+    });
     const upload = store.put('large', source).catch((error: Error) => error);
     await stalled.received(2 * 5 * MIB);
     // Ten thousand turns of the event loop are enough for an unbounded reader to take in all 400 MB.

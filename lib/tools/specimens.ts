@@ -1,0 +1,245 @@
+import type { Mode } from '@/lib/engine/contract/waveform';
+import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
+import { peakTime, withResolutionError } from '@/lib/engine/synthesis/effects';
+import { formatModesText, modeColumns } from '@/lib/engine/synthesis/modes-text';
+import { synthesise, type SynthesisRequest } from '@/lib/engine/synthesis/synthesise';
+
+/**
+ * The specimens: small claim sheets with synthesised data that are example, seed and test at once.
+ * Each is a function of nothing, so that the files in content/specimens can be made again byte for byte.
+ * Claimed numbers are what the invented authors print, not what the engine finds.
+ */
+export interface SpecimenFile {
+  readonly path: string;
+  readonly text: string;
+}
+export interface Specimen {
+  readonly folder: string;
+  readonly files: () => readonly SpecimenFile[];
+}
+
+const digits = 8;
+const sheet = (content: object): SpecimenFile => ({
+  path: 'claim.json',
+  text: `${JSON.stringify({ format: 'counterfoil-claim/1', ...content }, null, 2)}\n`,
+});
+
+/** Only m > 0: the sheet says `negativeM: "mirror"`, and half the bytes carry the same information. */
+const positive = (modes: readonly Mode[]): Mode[] => modes.filter(({ m }) => m > 0);
+
+function modesFile(
+  path: string,
+  title: string,
+  request: SynthesisRequest,
+  wave: { readonly t: Float64Array; readonly modes: readonly Mode[] },
+): SpecimenFile {
+  const { massRatio, chi1z, chi2z, mOmega0, stepM } = request;
+  const notes = [`mass ratio ${massRatio}, spins ${chi1z} and ${chi2z}, starts at M Omega = ${mOmega0}, step ${stepM} M`];
+  return { path, text: formatModesText({ title, notes, t: wave.t, modes: positive(wave.modes), significantDigits: digits }) };
+}
+
+function designCurveFile(path: string, points: number): SpecimenFile {
+  const curve = builtInCurve('G2')!;
+  const rows = Array.from({ length: points }, (_, i) => {
+    const f =
+      i === points - 1 ? curve.fHighHz : Number((curve.fLowHz * (curve.fHighHz / curve.fLowHz) ** (i / (points - 1))).toPrecision(9));
+    return `${f} ${Math.sqrt(curve.psd(f)).toPrecision(digits)}`;
+  });
+  return {
+    path,
+    text: [`# second-generation design (G2), ${points} points`, '# f (Hz)  ASD (Hz^-1/2), one-sided', ...rows, ''].join('\n'),
+  };
+}
+
+const waveform = (file: string, modes: readonly Mode[], extra: object) => ({
+  file,
+  domain: 'time',
+  variable: 'strain',
+  columns: modeColumns(positive(modes)),
+  timeUnit: 'M',
+  amplitudeUnit: 'rh/M',
+  negativeM: 'mirror',
+  ...extra,
+});
+const binaryFacts = ({ massRatio, chi1z, chi2z }: SynthesisRequest) => ({ massRatio, chi1z, chi2z });
+
+const nonSpinning: SynthesisRequest = { massRatio: 1, chi1z: 0, chi2z: 0, mOmega0: 0.012, stepM: 0.5, modes: ['22'] };
+const spinning: SynthesisRequest = { ...nonSpinning, chi1z: 0.2, chi2z: 0.2 };
+
+function spinVisible(): SpecimenFile[] {
+  const [a, b] = [synthesise(nonSpinning), synthesise(spinning)];
+  const statement = [
+    'Larkfield Wave Group, code *Tinderbox*.',
+    '',
+    'Two equal-mass binaries, one without spin and one with $\\chi_1=\\chi_2=0.2$ along the orbital angular momentum, are told apart by a second-generation detector: with a lower cut-off of 20 Hz their match is',
+    '',
+    '$$\n\\mathcal M=\\max_{t_0,\\phi_0}\\frac{\\langle h_1|h_2\\rangle}{\\sqrt{\\langle h_1|h_1\\rangle\\langle h_2|h_2\\rangle}}=0.9753\n$$',
+    '',
+    'at 60 solar masses, and 0.9959 and 0.9932 at 100 and 200 solar masses. Only the (2,±2) modes are used; masses are detector-frame.',
+  ].join('\n');
+  return [
+    sheet({
+      title: 'Spin 0.2 is visible at 60 solar masses',
+      statement,
+      waveforms: {
+        A: waveform('a.txt', a.modes, { binary: binaryFacts(nonSpinning) }),
+        B: waveform('b.txt', b.modes, { binary: binaryFacts(spinning) }),
+      },
+      noise: { S: { file: 'noise.txt', columns: ['f', 'asd'], sided: 'one' } },
+      claims: [
+        {
+          id: 'C1',
+          quantity: 'match',
+          of: { a: 'A', b: 'B' },
+          noise: 'S',
+          settings: { fLowHz: 20, massFrame: 'detector', maximise: ['time', 'phase'] },
+          over: { totalMassMsun: [60, 100, 200] },
+          claimed: ['0.9753', '0.9959', '0.9932'],
+          tolerance: 0.0005,
+        },
+      ],
+    }),
+    modesFile('a.txt', 'Larkfield Wave Group, Tinderbox run 12, no spin', nonSpinning, a),
+    modesFile('b.txt', 'Larkfield Wave Group, Tinderbox run 13, spins 0.2', spinning, b),
+    designCurveFile('noise.txt', 600),
+  ];
+}
+
+function loudness(): SpecimenFile[] {
+  const a = synthesise(nonSpinning);
+  const statement = [
+    'Saltern Institute of Strong Gravity, code *Gridlark*.',
+    '',
+    'Signal-to-noise ratio $\\rho$ of an equal-mass, non-spinning merger, face-on and optimally placed at a luminosity distance of 1000 Mpc, with',
+    '',
+    '$$\n\\rho^2=4\\int_{f_l}^{f_h}\\frac{|\\tilde h(f)|^2}{S_n(f)}\\,df,\\qquad f_l=20\\ \\mathrm{Hz},\n$$',
+    '',
+    'and the second-generation design curve: 25.67 at 60 and 37.25 at 100 solar masses (detector frame).',
+  ].join('\n');
+  return [
+    sheet({
+      title: 'Loudness of non-spinning mergers at 1 Gpc',
+      statement,
+      waveforms: { A: waveform('a.txt', a.modes, { binary: binaryFacts(nonSpinning) }) },
+      noise: { S: { curve: 'G2' } },
+      claims: [
+        {
+          id: 'C1',
+          quantity: 'snr',
+          of: { a: 'A' },
+          noise: 'S',
+          settings: { distanceMpc: 1000, fLowHz: 20, massFrame: 'detector', inclinationRad: 0 },
+          over: { totalMassMsun: [60, 100] },
+          claimed: ['25.67', '37.25'],
+        },
+      ],
+    }),
+    modesFile('a.txt', 'Saltern Institute of Strong Gravity, Gridlark run q1', nonSpinning, a),
+  ];
+}
+
+/** Phase that the coarser run has lost at the peak: a mismatch of 1e-6 at 100 solar masses on curve G2. */
+const coarsePhaseRad = 0.01;
+
+function preciseMatch(): SpecimenFile[] {
+  const requests = [
+    { ...nonSpinning, mOmega0: 0.016 },
+    { ...spinning, mOmega0: 0.016 },
+  ] as const;
+  const fine = requests.map((request) => synthesise(request));
+  const coarse = fine.map((wave) => withResolutionError(wave, { phaseRad: coarsePhaseRad, amplitude: 0 }, peakTime(wave)));
+  const statement = [
+    'Oxbow Relativity Unit, code *Oxbow-4*.',
+    '',
+    'The match of two of our equal-mass models, spins 0 and 0.2, at 100 solar masses with the second-generation design curve from 20 Hz is $\\mathcal M=0.988942$. Each model was run at two resolutions, whose mismatch is $10^{-6}$.',
+  ].join('\n');
+  const names = ['A', 'B'] as const;
+  const entries = names.flatMap((name, i) => [
+    [
+      name,
+      waveform(`${name.toLowerCase()}-fine.txt`, fine[i]!.modes, {
+        binary: binaryFacts(requests[i]!),
+        resolution: 0.01,
+        series: `run-${name}`,
+      }),
+    ],
+    [
+      `${name}coarse`,
+      waveform(`${name.toLowerCase()}-coarse.txt`, fine[i]!.modes, {
+        binary: binaryFacts(requests[i]!),
+        resolution: 0.0125,
+        series: `run-${name}`,
+      }),
+    ],
+  ]);
+  const settings = { totalMassMsun: 100, fLowHz: 20, massFrame: 'detector', maximise: ['time', 'phase'] };
+  return [
+    sheet({
+      title: 'High-precision match of two models',
+      statement,
+      waveforms: Object.fromEntries(entries),
+      noise: { S: { curve: 'G2' } },
+      claims: [
+        { id: 'C1', quantity: 'match', of: { a: 'A', b: 'B' }, noise: 'S', settings, claimed: '0.988942' },
+        { id: 'C2', quantity: 'mismatch', of: { a: 'A', b: 'Acoarse' }, noise: 'S', settings, claimed: '1.0e-6' },
+      ],
+    }),
+    ...names.flatMap((name, i) => [
+      modesFile(
+        `${name.toLowerCase()}-fine.txt`,
+        `Oxbow Relativity Unit, Oxbow-4, model ${name}, spacing 0.0100 M`,
+        requests[i]!,
+        fine[i]!,
+      ),
+      modesFile(
+        `${name.toLowerCase()}-coarse.txt`,
+        `Oxbow Relativity Unit, Oxbow-4, model ${name}, spacing 0.0125 M`,
+        requests[i]!,
+        coarse[i]!,
+      ),
+    ]),
+  ];
+}
+
+function energyRequest(): SynthesisRequest {
+  return { massRatio: 1, chi1z: 0, chi2z: 0, mOmega0: 0.02, stepM: 0.4, modes: ['22', '44', '32'] };
+}
+
+function radiatedEnergy(): SpecimenFile[] {
+  const request = energyRequest();
+  const wave = synthesise(request);
+  const statement = [
+    'Hollowell Computation Centre, code *Ninefold*.',
+    '',
+    'An equal-mass, non-spinning merger radiates 4.0 % of its mass from an orbital frequency of $M\\Omega=0.02$ on:',
+    '',
+    '$$\n\\frac{E}{M}=\\frac1{16\\pi}\\sum_{\\ell m}\\int|\\dot H_{\\ell m}|^2\\,dt=0.0399(2).\n$$',
+    '',
+    'Modes (2,±2), (3,±2), (4,±4); the energy radiated before the first sample is not included.',
+  ].join('\n');
+  return [
+    sheet({
+      title: 'Four per cent of the mass radiated',
+      statement,
+      waveforms: { A: waveform('modes.txt', wave.modes, { binary: binaryFacts(request) }) },
+      claims: [
+        {
+          id: 'C1',
+          quantity: 'radiated-energy',
+          of: { a: 'A' },
+          settings: { startM: 0, includeEnergyBeforeStart: false, normaliseBy: 'M' },
+          claimed: '0.0399',
+          tolerance: 0.0002,
+        },
+      ],
+    }),
+    modesFile('modes.txt', 'Hollowell Computation Centre, Ninefold run 4', request, wave),
+  ];
+}
+
+export const specimens: readonly Specimen[] = [
+  { folder: 'spin-visible', files: spinVisible },
+  { folder: 'loudness', files: loudness },
+  { folder: 'precise-match', files: preciseMatch },
+  { folder: 'radiated-energy', files: radiatedEnergy },
+];
