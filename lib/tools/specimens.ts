@@ -39,7 +39,8 @@ function modesFile(
 }
 
 function designCurveFile(path: string, points: number): SpecimenFile {
-  const curve = builtInCurve('G2')!;
+  const curve = builtInCurve('G2');
+  if (!curve) throw new Error('the design curve G2 is not built in');
   const rows = Array.from({ length: points }, (_, i) => {
     const f =
       i === points - 1 ? curve.fHighHz : Number((curve.fLowHz * (curve.fHighHz / curve.fLowHz) ** (i / (points - 1))).toPrecision(9));
@@ -143,63 +144,50 @@ const coarsePhaseRad = 0.23;
 
 /** The same record without its first `n` samples: 10 Hz at 100 solar masses is early enough, and half the bytes. */
 const withoutStart = <T extends Pick<SyntheticWaveform, 't' | 'modes'>>(wave: T, n: number): T => ({
-  ...wave, t: wave.t.subarray(n), modes: wave.modes.map((mode) => ({ ...mode, re: mode.re.subarray(n), im: mode.im.subarray(n) })),
+  ...wave,
+  t: wave.t.subarray(n),
+  modes: wave.modes.map((mode) => ({ ...mode, re: mode.re.subarray(n), im: mode.im.subarray(n) })),
 });
 
+const preciseModels = () =>
+  [
+    { name: 'A', request: nonSpinning },
+    { name: 'B', request: spinning },
+  ].map(({ name, request }) => {
+    const fine = withoutStart(synthesise(request), 11000);
+    const coarse = withResolutionError(fine, { phaseRad: coarsePhaseRad, amplitude: 0 }, peakTime(fine));
+    return [
+      { name, file: `${name.toLowerCase()}-fine.txt`, request, wave: fine, spacing: 0.01, series: `run-${name}` },
+      { name: `${name}coarse`, file: `${name.toLowerCase()}-coarse.txt`, request, wave: coarse, spacing: 0.0125, series: `run-${name}` },
+    ];
+  });
+
 function preciseMatch(): SpecimenFile[] {
-  const requests = [nonSpinning, spinning] as const;
-  const fine = requests.map((request) => withoutStart(synthesise(request), 11000));
-  const coarse = fine.map((wave) => withResolutionError(wave, { phaseRad: coarsePhaseRad, amplitude: 0 }, peakTime(wave)));
+  const runs = preciseModels().flat();
   const statement = [
     'Oxbow Relativity Unit, code *Oxbow-4*.',
     '',
     'The match of two of our equal-mass models, spins 0 and 0.2, at 100 solar masses with the second-generation design curve from 20 Hz is $\\mathcal M=0.988942$. Each model was run at two resolutions, whose mismatch is $10^{-6}$.',
   ].join('\n');
-  const names = ['A', 'B'] as const;
-  const entries = names.flatMap((name, i) => [
-    [
-      name,
-      waveform(`${name.toLowerCase()}-fine.txt`, fine[i]!.modes, {
-        binary: binaryFacts(requests[i]!),
-        resolution: 0.01,
-        series: `run-${name}`,
-      }),
-    ],
-    [
-      `${name}coarse`,
-      waveform(`${name.toLowerCase()}-coarse.txt`, fine[i]!.modes, {
-        binary: binaryFacts(requests[i]!),
-        resolution: 0.0125,
-        series: `run-${name}`,
-      }),
-    ],
+  const waveforms = runs.map(({ name, file, request, wave, spacing, series }) => [
+    name,
+    waveform(file, wave.modes, { binary: binaryFacts(request), resolution: spacing, series }),
   ]);
   const settings = { totalMassMsun: 100, fLowHz: 20, massFrame: 'detector', maximise: ['time', 'phase'] };
   return [
     sheet({
       title: 'High-precision match of two models',
       statement,
-      waveforms: Object.fromEntries(entries),
+      waveforms: Object.fromEntries(waveforms),
       noise: { S: { curve: 'G2' } },
       claims: [
         { id: 'C1', quantity: 'match', of: { a: 'A', b: 'B' }, noise: 'S', settings, claimed: '0.988942' },
         { id: 'C2', quantity: 'mismatch', of: { a: 'A', b: 'Acoarse' }, noise: 'S', settings, claimed: '1.0e-6' },
       ],
     }),
-    ...names.flatMap((name, i) => [
-      modesFile(
-        `${name.toLowerCase()}-fine.txt`,
-        `Oxbow Relativity Unit, Oxbow-4, model ${name}, spacing 0.0100 M`,
-        requests[i]!,
-        fine[i]!,
-      ),
-      modesFile(
-        `${name.toLowerCase()}-coarse.txt`,
-        `Oxbow Relativity Unit, Oxbow-4, model ${name}, spacing 0.0125 M`,
-        requests[i]!,
-        coarse[i]!,
-      ),
-    ]),
+    ...runs.map(({ file, request, wave, spacing, series }) =>
+      modesFile(file, `Oxbow Relativity Unit, Oxbow-4, ${series}, spacing ${spacing} M`, request, wave),
+    ),
   ];
 }
 

@@ -41,7 +41,10 @@ export function secondGenerationThirdSite(fHz: number): number {
   const term = (a: number, b: number, c: number, d: number) => a * Math.exp(b + c * x + d * x * x);
   const asd =
     1.259e-24 *
-    (term(0.07, -0.142, -1.437, 0.407) + term(3.1, -0.466, -1.043, -0.548) + term(0.4, -0.304, 2.896, -0.293) + term(0.09, 1.466, 3.722, -0.984));
+    (term(0.07, -0.142, -1.437, 0.407) +
+      term(3.1, -0.466, -1.043, -0.548) +
+      term(0.4, -0.304, 2.896, -0.293) +
+      term(0.09, 1.466, 3.722, -0.984));
   return asd * asd;
 }
 

@@ -42,7 +42,13 @@ export function tabulatedCurve(table: NoiseTable): Result<TabulatedCurve, Findin
   const coarse = coarseFinding(table, f, s);
   return ok({
     curve: {
-      name: table.name, builtIn: null, fLowHz: f[0]!, fHighHz: f[f.length - 1]!, psd, points: f, alreadyAveraged: false,
+      name: table.name,
+      builtIn: null,
+      fLowHz: f[0]!,
+      fHighHz: f[f.length - 1]!,
+      psd,
+      points: f,
+      alreadyAveraged: false,
       source: `table of ${f.length} points, ${table.meaning}, ${table.sided}-sided, as attached`,
     },
     findings: coarse ? [coarse] : [],
@@ -58,7 +64,8 @@ function invalidRows(table: NoiseTable): Finding[] {
   const n = table.f.length;
   const found: Finding[] = [];
   const add = (where: string, text: string) => {
-    if (found.length < maxReported) found.push({ code: 'engine/curve-invalid', level: 'stops-lodging', where, text, fix: 'Correct the row or attach another curve.' });
+    if (found.length < maxReported)
+      found.push({ code: 'engine/curve-invalid', level: 'stops-lodging', where, text, fix: 'Correct the row or attach another curve.' });
   };
   if (n !== table.values.length) add(table.name, `The curve has ${n} frequencies and ${table.values.length} values.`);
   else if (n < 2) add(table.name, `The curve has ${n} point${n === 1 ? '' : 's'}; at least two are needed.`);
@@ -73,7 +80,8 @@ function rowProblems(table: NoiseTable, i: number): string[] {
   const value = table.values[i]!;
   const problems: string[] = [];
   if (!Number.isFinite(f) || f <= 0) problems.push(`The frequency is ${f}; it must be a positive number of Hz.`);
-  else if (i > 0 && !(f > table.f[i - 1]!)) problems.push(`The frequency goes from ${table.f[i - 1]} to ${f} Hz; it must rise from row to row.`);
+  else if (i > 0 && !(f > table.f[i - 1]!))
+    problems.push(`The frequency goes from ${table.f[i - 1]} to ${f} Hz; it must rise from row to row.`);
   if (!Number.isFinite(value) || value <= 0) problems.push(`The noise value is ${value}; it must be positive.`);
   else if (f > 0 && !isPositiveFinite(oneSidedPower(value, f, table)))
     problems.push(`The noise value ${value} as ${table.meaning} gives a power density outside the range of double precision.`);
@@ -94,7 +102,9 @@ function coarseFinding(table: NoiseTable, f: Float64Array, s: Float64Array): Fin
   if (widest < 0) return null;
   const density = 1 / octaves(f, widest);
   return {
-    code: 'engine/curve-coarse', level: 'worth-a-look', where: rowPlace(table, widest),
+    code: 'engine/curve-coarse',
+    level: 'worth-a-look',
+    where: rowPlace(table, widest),
     text: `${gaps} of ${f.length - 1} steps hold fewer than ${pointsAnOctave} points an octave; the widest goes from ${f[widest - 1]} to ${f[widest]} Hz (${density.toPrecision(2)} points an octave). There the value depends on how the curve is interpolated.`,
     fix: 'Attach the curve with more points, or name a built-in curve.',
   };

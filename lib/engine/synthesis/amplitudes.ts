@@ -3,7 +3,11 @@ import type { TabulatedMode } from './quasi-normal';
 
 /** Constant phase of each mode relative to e^{−imφ}, as (re, im). */
 export const modePhase: Record<TabulatedMode, readonly [number, number]> = {
-  22: [1, 0], 21: [0, 1], 33: [0, -1], 44: [-1, 0], 32: [1, 0],
+  22: [1, 0],
+  21: [0, 1],
+  33: [0, -1],
+  44: [-1, 0],
+  32: [1, 0],
 };
 
 /**

@@ -21,8 +21,12 @@ export function orbitalDecay(binary: Binary): (x: number) => number {
   const c4 = 34103 / 18144 + (13661 / 2016) * eta + (59 / 18) * eta2 + sigma;
   const c5 = -PI * (4159 / 672 + (189 / 8) * eta);
   const c6 =
-    16447322263 / 139708800 - (1712 / 105) * eulerGamma + (16 * PI * PI) / 3 +
-    (-56198689 / 217728 + (451 * PI * PI) / 48) * eta + (541 / 896) * eta2 - (5605 / 2592) * eta2 * eta;
+    16447322263 / 139708800 -
+    (1712 / 105) * eulerGamma +
+    (16 * PI * PI) / 3 +
+    (-56198689 / 217728 + (451 * PI * PI) / 48) * eta +
+    (541 / 896) * eta2 -
+    (5605 / 2592) * eta2 * eta;
   const c7 = PI * (-4415 / 4032 + (358675 / 6048) * eta + (91495 / 1512) * eta2);
   return (x) => {
     const v = Math.sqrt(x);

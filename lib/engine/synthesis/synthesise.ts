@@ -97,7 +97,13 @@ function phaseAlong(t: Float64Array, inspiral: Inspiral, merger: MergerFrequency
 }
 
 /** Real amplitude at sample i (time t), sign included; zero for modes that symmetry forbids. */
-function amplitudeAlong(mode: TabulatedMode, binary: Binary, inspiral: Inspiral, merger: MergerFrequency, peakX: number): (i: number, t: number) => number {
+function amplitudeAlong(
+  mode: TabulatedMode,
+  binary: Binary,
+  inspiral: Inspiral,
+  merger: MergerFrequency,
+  peakX: number,
+): (i: number, t: number) => number {
   const relative = relativeAmplitude(mode, binary);
   const value = (x: number) => 8 * Math.sqrt(Math.PI / 5) * binary.eta * x * relative(x);
   const { x, t0, decay } = inspiral;
@@ -127,5 +133,8 @@ function withMirror(name: TabulatedMode, t: Float64Array, phase: Float64Array, a
     im[i] = pr * s + pi * c;
   }
   const sign = l % 2 === 0 ? 1 : -1;
-  return [{ l, m, re, im }, { l, m: -m, re: re.map((x) => sign * x), im: im.map((x) => -sign * x) }];
+  return [
+    { l, m, re, im },
+    { l, m: -m, re: re.map((x) => sign * x), im: im.map((x) => -sign * x) },
+  ];
 }

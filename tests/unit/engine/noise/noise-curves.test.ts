@@ -3,7 +3,12 @@ import { builtInCurve, builtInCurves } from '@/lib/engine/noise/built-in-curves'
 import { tabulatedCurve, type NoiseTable } from '@/lib/engine/noise/tabulated-curve';
 
 const table = (changes: Partial<NoiseTable> = {}): NoiseTable => ({
-  name: 'S', f: [10, 11, 12, 13], values: [4e-23, 3e-23, 2e-23, 1e-23], meaning: 'asd', sided: 'one', ...changes,
+  name: 'S',
+  f: [10, 11, 12, 13],
+  values: [4e-23, 3e-23, 2e-23, 1e-23],
+  meaning: 'asd',
+  sided: 'one',
+  ...changes,
 });
 const made = (changes: Partial<NoiseTable> = {}) => {
   const result = tabulatedCurve(table(changes));
@@ -31,7 +36,12 @@ describe('a built-in curve', () => {
     expect(g2.psd(10 * (1 - 1e-10))).toBeGreaterThan(0);
   });
   it('says when it already contains the sky average', () => {
-    expect(builtInCurves.filter((c) => c.alreadyAveraged).map((c) => c.id).sort()).toEqual(['A5', 'SB']);
+    expect(
+      builtInCurves
+        .filter((c) => c.alreadyAveraged)
+        .map((c) => c.id)
+        .sort(),
+    ).toEqual(['A5', 'SB']);
   });
   it('is undefined under a name that nobody published', () => expect(builtInCurve('Z9')).toBeUndefined());
   it('has an id of its own, a source and a statement of how it was obtained', () => {
@@ -50,7 +60,12 @@ describe('a noise table', () => {
     const f = Array.from({ length: 300 }, (_, i) => 10 * 1.01 ** i);
     const values = f.map((x) => 1e-23 * (2 + Math.sin(x)));
     const { curve } = made({ f, values });
-    for (const [a, b] of [[11, 150], [150, 11], [20, 20.1], [20.1, 20]] as const) {
+    for (const [a, b] of [
+      [11, 150],
+      [150, 11],
+      [20, 20.1],
+      [20.1, 20],
+    ] as const) {
       curve.psd(a);
       expect(curve.psd(b)).toBe(made({ f, values }).curve.psd(b));
     }

@@ -7,7 +7,10 @@ const wave = synthesise({ massRatio: 1, chi1z: 0, chi2z: 0, mOmega0: 0.03, stepM
 
 describe('a start-up burst', () => {
   it('carries 5.2e-4 of the mass, as its closed form says', () => {
-    const silent = { ...wave, modes: wave.modes.map((m) => ({ ...m, re: new Float64Array(m.re.length), im: new Float64Array(m.im.length) })) };
+    const silent = {
+      ...wave,
+      modes: wave.modes.map((m) => ({ ...m, re: new Float64Array(m.re.length), im: new Float64Array(m.im.length) })),
+    };
     const { modes } = withStartUpBurst(silent);
     let energy = 0;
     for (const { re, im } of modes)

@@ -11,7 +11,8 @@ describe.each(specimens.map(({ folder, files }) => [folder, files] as const))('t
   const made = files();
   it('is what the generator makes, byte for byte', () => {
     // Not toBe: a difference in 600 kB would be printed in full.
-    for (const { path, text } of made) expect(text === stored(folder, path), `${folder}/${path} is stale: run lib/tools/make-specimens.ts`).toBe(true);
+    for (const { path, text } of made)
+      expect(text === stored(folder, path), `${folder}/${path} is stale: run lib/tools/make-specimens.ts`).toBe(true);
   });
   it('has no other files, and none above 1.5 MB', () => {
     expect(readdirSync(join(root, folder)).sort()).toEqual(made.map(({ path }) => path).sort());

@@ -29,7 +29,12 @@ function energyBefore(eta: number, mOmega0: number): number {
 
 describe('a synthesised waveform', () => {
   it('radiates what appendix B states, energy before the record included', () => {
-    for (const [massRatio, chi, expected] of [[1, 0, 0.0485], [1, 0.6, 0.0706], [1, -0.6, 0.0385], [2, 0, 0.0386]] as const) {
+    for (const [massRatio, chi, expected] of [
+      [1, 0, 0.0485],
+      [1, 0.6, 0.0706],
+      [1, -0.6, 0.0385],
+      [2, 0, 0.0386],
+    ] as const) {
       const wave = synthesise({ ...equalMass, massRatio, chi1z: chi, chi2z: chi });
       const eta = massRatio / (1 + massRatio) ** 2;
       expect(radiatedEnergy(wave) + energyBefore(eta, 0.02)).toBeCloseTo(expected, 3.5);
@@ -39,7 +44,9 @@ describe('a synthesised waveform', () => {
     const wave = synthesise(equalMass);
     const all = radiatedEnergy(wave);
     expect(all).toBeCloseTo(0.03991, 4);
-    expect(Math.abs(radiatedEnergy({ t: wave.t, modes: wave.modes.filter((x) => x.l === 2 && Math.abs(x.m) === 2) }) / all - 0.984)).toBeLessThan(0.001);
+    expect(
+      Math.abs(radiatedEnergy({ t: wave.t, modes: wave.modes.filter((x) => x.l === 2 && Math.abs(x.m) === 2) }) / all - 0.984),
+    ).toBeLessThan(0.001);
   });
   it('rotates as the house convention says: H22 ∝ e^{−iφ} with φ increasing', () => {
     const { re, im } = mode(synthesise(equalMass), 2, 2);
@@ -75,7 +82,11 @@ describe('a synthesised waveform', () => {
   });
   it('has no odd-m power when masses and spins are equal', () => {
     const wave = synthesise(equalMass);
-    for (const [l, m] of [[2, 1], [3, 3]] as const) expect(mode(wave, l, m).re.every((x) => x === 0)).toBe(true);
+    for (const [l, m] of [
+      [2, 1],
+      [3, 3],
+    ] as const)
+      expect(mode(wave, l, m).re.every((x) => x === 0)).toBe(true);
   });
   it('is finite when a mode changes sign between inspiral and peak', () => {
     const wave = synthesise({ ...equalMass, massRatio: 1.2, chi1z: 0.9, chi2z: 0.1 });
@@ -105,7 +116,15 @@ describe('the inspiral', () => {
 
 describe('the remnant', () => {
   it('has the mass and spin of the check table in appendix A', () => {
-    const table = [[1, 0, 0, 0.95161, 0.68642], [1, 0.6, 0.6, 0.92656, 0.85816], [1, -0.6, -0.6, 0.96367, 0.49423], [1, 0.6, -0.6, 0.95161, 0.68642], [2, 0, 0, 0.96124, 0.62354], [3, 0.5, 0.2, 0.95961, 0.76113], [4, 0, 0, 0.97791, 0.47149]] as const;
+    const table = [
+      [1, 0, 0, 0.95161, 0.68642],
+      [1, 0.6, 0.6, 0.92656, 0.85816],
+      [1, -0.6, -0.6, 0.96367, 0.49423],
+      [1, 0.6, -0.6, 0.95161, 0.68642],
+      [2, 0, 0, 0.96124, 0.62354],
+      [3, 0.5, 0.2, 0.95961, 0.76113],
+      [4, 0, 0, 0.97791, 0.47149],
+    ] as const;
     for (const [massRatio, chi1z, chi2z, mass, spin] of table) {
       const binary = binaryOf({ massRatio, chi1z, chi2z });
       expect(1 - remnantRadiatedEnergy(binary)).toBeCloseTo(mass, 4.7);
