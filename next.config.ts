@@ -22,6 +22,8 @@ const config: NextConfig = {
   poweredByHeader: false,
   agentRules: false,
   reactStrictMode: true,
+  // Tests are type-checked by `npm run check`; a build for a server need not wait for them.
+  typescript: { tsconfigPath: 'tsconfig.build.json' },
   serverExternalPackages: ['h5wasm', 'pg', 'piscina', 'graphile-worker', 'pino'],
   turbopack: { root: fileURLToPath(new URL('.', import.meta.url)) },
   experimental: { serverActions: { bodySizeLimit: '1mb' } },

@@ -27,7 +27,7 @@ export const hostsOf = (env: { readonly APP_URL: string; readonly DEMO: boolean 
 
 /** The framework owns its server object, so the gate stands where every Node server hands out requests. */
 export function installFrontGate(hosts: ReadonlySet<string>): void {
-  const emit = Server.prototype.emit;
+  const emit = Server.prototype.emit as (this: Server, event: string | symbol, ...rest: unknown[]) => boolean;
   Server.prototype.emit = function (this: Server, event: string | symbol, ...rest: unknown[]): boolean {
     if (event !== 'request') return emit.call(this, event, ...rest);
     const [request, response] = rest as [IncomingMessage, ServerResponse];

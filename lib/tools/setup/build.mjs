@@ -6,7 +6,7 @@ import { DATA, ROOT, say } from './ground.mjs';
 import { holdLock } from './lock.mjs';
 
 const INPUTS = [
-  'app', 'lib', 'db', 'content', 'public', 'package-lock.json', 'tsconfig.json', 'next.config.ts', 'tailwind.config.ts',
+  'app', 'lib', 'db', 'content', 'public', 'package-lock.json', 'tsconfig.json', 'tsconfig.build.json', 'next.config.ts', 'tailwind.config.ts',
   'postcss.config.mjs', 'proxy.ts', 'instrumentation.ts', 'instrumentation-node.ts',
 ]; // prettier-ignore
 const BUILT = path.join(ROOT, '.next');
