@@ -1,20 +1,11 @@
 import type { BudgetLine, Figure, MeasuredPoint, UsedSetting } from '@/lib/engine/contract/measurement';
+import type { Claimed } from '@/lib/claims/claimed';
 import type { Finding } from '@/lib/engine/contract/finding';
+import type { Coverage } from '@/lib/verdicts/coverage';
+import type { VerdictWord } from '@/lib/verdicts/verdict';
 
 /** `counterfoil-result/1`: what one run says about one sheet. Field names are the open contract. */
-export type VerdictWord = 'agrees' | 'differs' | 'unsettled' | 'not-computable' | 'routes-disagree';
-
-export type Claimed =
-  | { readonly kind: 'value'; readonly value: number; readonly uncertainty: number | null; readonly digits: number | null; readonly printed: string }
-  | { readonly kind: 'above' | 'below'; readonly bound: number; readonly printed: string };
-
-export interface Coverage {
-  readonly state: 'covered' | 'understated' | 'unknown';
-  /** Budget components that the files cannot give. */
-  readonly missing?: readonly string[];
-  /** How many times too small the stated uncertainty is. */
-  readonly factor?: number;
-}
+export type { Claimed, Coverage, VerdictWord };
 
 export interface ResultPoint extends Omit<MeasuredPoint, 'remarks'> {
   readonly claimed: number | { readonly above: number } | { readonly below: number };

@@ -15,7 +15,7 @@ export interface TableLimits {
 export const tableLimits: TableLimits = { bytes: 512 * 2 ** 20, rows: 2 ** 21, cells: 2 ** 25, lineBytes: 2 ** 18 };
 
 const reportedProblems = 10;
-const reportedNotFinite = 20;
+const reportedNotFinite = 5;
 const newline = 10;
 const blank = 0;
 const comma = 1;
@@ -41,6 +41,7 @@ export class TableParser {
   private line = 0;
   private bytes = 0;
   private separator = -1;
+  private notFiniteCount = 0;
   private started = false;
   private stopped = false;
 
@@ -84,6 +85,7 @@ export class TableParser {
       columns: this.columns.map((column) => column && (column.length === this.rows ? column : column.slice(0, this.rows))),
       significantDigits: Array.from(this.digits),
       notFinite: this.notFinite,
+      notFiniteCount: this.notFiniteCount,
       lineOfRow: (row) => this.lines.lineOf(row),
     });
   }
@@ -180,6 +182,7 @@ export class TableParser {
     if (end === start || end - start > 9) return -1;
     const printed = String.fromCharCode(...bytes.subarray(start, end));
     if (!/^[+-]?(nan|inf|infinity)$/i.test(printed)) return -1;
+    this.notFiniteCount++;
     if (this.notFinite.length < reportedNotFinite) this.notFinite.push({ line: this.line, column, printed, row: this.rows });
     this.columns[column]![this.rows] = Number.NaN;
     return end;

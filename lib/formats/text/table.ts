@@ -6,7 +6,9 @@ export interface NumberTable {
   readonly columns: readonly (Float64Array | null)[];
   /** Most significant digits printed in each column, 0 when all its values are zero. */
   readonly significantDigits: readonly number[];
+  /** The first few; `notFiniteCount` says how many there are. */
   readonly notFinite: readonly NotFinite[];
+  readonly notFiniteCount: number;
   readonly lineOfRow: (row: number) => number;
 }
 

@@ -1,0 +1,83 @@
+import type { Quantity } from '@/lib/engine/contract/quantity';
+import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settings';
+import type { Problem } from '@/lib/kernel/problem';
+import { laterSettings, type Catalogue } from './catalogue';
+import { checkPart, unknownName } from './check-part';
+import { describe, pointer } from './pointer';
+import { expectation, settingSchema } from './setting-schema';
+
+const mostSwept = 2000;
+type Path = readonly PropertyKey[];
+export type Sweep = { readonly setting: SettingName; readonly values: readonly number[] };
+
+/** Settings of one claim: known, allowed for its quantity, of the right type, inside their range. */
+export function parseSettings(raw: Readonly<Record<string, unknown>>, quantity: Quantity, catalogue: Catalogue, path: Path, problems: Problem[]): DeclaredSettings {
+  const settings: Record<string, unknown> = {};
+  for (const [name, value] of Object.entries(raw)) {
+    const fault = settingFault(name, quantity, catalogue, path);
+    if (fault) problems.push(fault);
+    const row = catalogue.settings.get(name);
+    if (!row) continue;
+    const parsed = checkPart(settingSchema(row), value, [...path, name], [], problems);
+    if (!fault && parsed !== null) settings[name] = parsed;
+  }
+  const { fLowHz, fHighHz } = settings as DeclaredSettings;
+  if (fLowHz !== undefined && fHighHz !== undefined && !(fHighHz > fLowHz)) problems.push(bandOrder(fHighHz, fLowHz, [...path, 'fHighHz']));
+  return settings;
+}
+
+const bandOrder = (high: number, low: number, path: Path): Problem => ({ code: 'claims/out-of-range', where: pointer(...path), saw: `an upper edge of ${high} Hz with a lower edge of ${low} Hz`, expected: 'fHighHz above fLowHz' });
+
+function settingFault(name: string, quantity: Quantity, catalogue: Catalogue, path: Path): Problem | null {
+  const allowed: readonly string[] = quantity.settings;
+  if (allowed.includes(name)) return null;
+  const later = (laterSettings as readonly string[]).includes(name);
+  if (!later && !catalogue.settings.has(name)) return unknownName(name, path, allowed);
+  const hint = name === 'maximise' && quantity.id === 'overlap' ? 'An overlap is not maximised; the quantity "match" is.' : undefined;
+  return { code: 'claims/setting-not-for-quantity', where: pointer(...path, name), saw: `the setting "${name}"`, expected: `a setting of ${quantity.id}: ${allowed.join(', ')}`, ...(hint ? { hint } : {}) };
+}
+
+/** `over`: exactly one setting that this quantity lets sweep, with a list of values in range. */
+export function parseSweep(raw: Readonly<Record<string, unknown>>, quantity: Quantity, declared: Readonly<Record<string, unknown>>, catalogue: Catalogue, path: Path, problems: Problem[]): Sweep | null {
+  const names = Object.keys(raw);
+  const sweepable: readonly string[] = quantity.sweepable;
+  if (names.length !== 1) {
+    problems.push({ code: 'claims/sweep', where: pointer(...path), saw: names.length === 0 ? 'no swept setting' : `the settings ${names.join(', ')}`, expected: 'exactly one swept setting', ...(names.length > 1 ? { hint: 'Make one claim for each.' } : {}) });
+    return null;
+  }
+  const name = names[0] ?? '';
+  const at = [...path, name];
+  const row = catalogue.settings.get(name);
+  if (!row || !sweepable.includes(name)) {
+    const known = row !== undefined || (laterSettings as readonly string[]).includes(name);
+    problems.push(known ? { code: 'claims/sweep', where: pointer(...at), saw: `a sweep over "${name}"`, expected: `a sweep over one of ${sweepable.join(', ')}` } : unknownName(name, path, sweepable));
+    return null;
+  }
+  if (name in declared) problems.push({ code: 'claims/sweep', where: pointer(...at), saw: `"${name}" both in "settings" and in "over"`, expected: 'it in one of the two' });
+  return { setting: row.name, values: sweptValues(raw[name], row, at, problems) };
+}
+
+function sweptValues(values: unknown, row: Parameters<typeof settingSchema>[0], at: Path, problems: Problem[]): number[] {
+  if (!Array.isArray(values) || values.length === 0 || values.length > mostSwept) {
+    problems.push({ code: 'claims/sweep', where: pointer(...at), saw: describe(values), expected: `a list of 1 to ${mostSwept} values` });
+    return [];
+  }
+  const schema = settingSchema(row);
+  return values.flatMap((value, i) => {
+    const parsed = checkPart(schema, value, [...at, i], [], problems);
+    if (typeof parsed === 'number') return [parsed];
+    if (parsed !== null) problems.push({ code: 'claims/sweep', where: pointer(...at, i), saw: describe(value), expected: `numbers in a sweep (${expectation(row)})` });
+    return [];
+  });
+}
+
+/** Every swept edge against the other, declared one. */
+export function sweptBandProblems(settings: DeclaredSettings, sweep: Sweep | null, path: Path): Problem[] {
+  if (!sweep) return [];
+  return sweep.values.flatMap((value, i) => {
+    const low = sweep.setting === 'fLowHz' ? value : settings.fLowHz;
+    const high = sweep.setting === 'fHighHz' ? value : settings.fHighHz;
+    const swept = sweep.setting === 'fLowHz' || sweep.setting === 'fHighHz';
+    return swept && low !== undefined && high !== undefined && !(high > low) ? [bandOrder(high, low, [...path, sweep.setting, i])] : [];
+  });
+}

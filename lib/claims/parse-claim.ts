@@ -1,0 +1,80 @@
+import type { NoiseDeclaration, WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { Problem } from '@/lib/kernel/problem';
+import { quantityIds, type Catalogue } from './catalogue';
+import { checkPart } from './check-part';
+import type { Claim } from './claim';
+import { missingSettings, parseNoiseName, parseRoles, settingAgainstWaveforms } from './claim-inputs';
+import { parseSettings, parseSweep, sweptBandProblems, type Sweep } from './claim-settings';
+import { parseClaimed, type Claimed } from './claimed';
+import { didYouMean } from './nearest-name';
+import { describe, pointer } from './pointer';
+import { claimSchema, type RawClaim } from './sheet-schema';
+
+/** What the rest of the sheet offers a claim. Entries that did not parse are null: their names still count as known. */
+export interface Surroundings {
+  readonly waveforms: ReadonlyMap<string, WaveformDeclaration | null>;
+  readonly noise: ReadonlyMap<string, NoiseDeclaration | null>;
+  readonly catalogue: Catalogue;
+}
+
+const known = Object.keys(claimSchema.shape);
+
+/** One entry of `claims`, or null beside every problem it has. */
+export function parseClaim(value: unknown, index: number, around: Surroundings, problems: Problem[]): Claim | null {
+  const path = ['claims', index];
+  const before = problems.length;
+  const raw = checkPart(claimSchema, value, path, known, problems);
+  if (raw === null) return null;
+  const quantity = around.catalogue.quantities.get(raw.quantity);
+  if (!quantity) {
+    problems.push(unknownQuantity(raw.quantity, pointer(...path, 'quantity'), around.catalogue));
+    return null;
+  }
+  const of = parseRoles(raw.of, quantity, [...around.waveforms.keys()], [...path, 'of'], problems);
+  const noise = parseNoiseName(raw.noise, quantity, [...around.noise.keys()], path, problems);
+  const settings = parseSettings(raw.settings ?? {}, quantity, around.catalogue, [...path, 'settings'], problems);
+  const over = raw.over === undefined ? null : parseSweep(raw.over, quantity, raw.settings ?? {}, around.catalogue, [...path, 'over'], problems);
+  problems.push(...sweptBandProblems(settings, over, [...path, 'over']));
+  const claimed = parseClaimedList(raw, path, over, problems);
+  const waveforms = { a: of.a === undefined ? undefined : around.waveforms.get(of.a), b: of.b === undefined ? undefined : around.waveforms.get(of.b) };
+  const declared = { ...(waveforms.a ? { a: waveforms.a } : {}), ...(waveforms.b ? { b: waveforms.b } : {}) };
+  problems.push(...settingAgainstWaveforms(settings, over, declared, path));
+  const rolesKnown = quantity.roles.every((role) => declared[role] !== undefined);
+  if (rolesKnown) problems.push(...missingSettings(quantity, settings, over, declared, path));
+  if (problems.length > before) return null;
+  return { id: raw.id, quantity, of, noise, settings, over, claimed, tolerance: raw.tolerance ?? null };
+}
+
+function unknownQuantity(id: string, where: string, catalogue: Catalogue): Problem {
+  const built = [...catalogue.quantities.keys()];
+  if ((quantityIds as readonly string[]).includes(id))
+    return { code: 'claims/not-built-yet', where, saw: `the quantity "${id}"`, expected: `a quantity that this version computes (${built.join(', ')})`, hint: `"${id}" belongs to the format, but is not computed yet.` };
+  const hint = didYouMean(id, quantityIds);
+  return { code: 'claims/unknown-name', where, saw: `the unknown quantity ${describe(id)}`, expected: `one of ${built.join(', ')}`, ...(hint ? { hint } : {}) };
+}
+
+/** One claimed entry a point: an array for a sweep, a single entry otherwise. */
+function parseClaimedList(raw: RawClaim, path: readonly PropertyKey[], over: Sweep | null, problems: Problem[]): Claimed[] {
+  const at = [...path, 'claimed'];
+  if (raw.claimed === undefined) {
+    problems.push({ code: 'claims/missing', where: pointer(...at), saw: 'nothing', expected: 'the claimed value' });
+    return [];
+  }
+  const swept = raw.over !== undefined;
+  if (swept !== Array.isArray(raw.claimed)) {
+    problems.push({ code: 'claims/claimed', where: pointer(...at), saw: swept ? `one entry, ${describe(raw.claimed)}` : `a list, ${describe(raw.claimed)}`, expected: swept ? 'a list with one entry for each value of "over"' : 'one entry, as nothing is swept', ...(swept ? { hint: 'Repeat an inequality for each value.' } : { hint: 'Name the swept setting in "over".' }) });
+    return [];
+  }
+  const entries: readonly unknown[] = Array.isArray(raw.claimed) ? raw.claimed : [raw.claimed];
+  if (over && over.values.length > 0 && entries.length !== over.values.length)
+    problems.push({ code: 'claims/claimed', where: pointer(...at), saw: `${entries.length} claimed entr${entries.length === 1 ? 'y' : 'ies'}`, expected: `${over.values.length}, one for each value of "over"` });
+  const claimed = entries.flatMap((entry, i) => {
+    const parsed = parseClaimed(entry);
+    if (parsed.ok) return [parsed.value];
+    problems.push({ where: pointer(...at, ...(swept ? [i] : [])), ...parsed.error });
+    return [];
+  });
+  if (raw.tolerance !== undefined && claimed.length > 0 && claimed.every((entry) => entry.kind !== 'value'))
+    problems.push({ code: 'claims/not-allowed', where: pointer(...path, 'tolerance'), saw: describe(raw.tolerance), expected: 'no tolerance for an inequality', hint: 'State the bound itself more widely.' });
+  return claimed;
+}

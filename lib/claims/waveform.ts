@@ -1,0 +1,142 @@
+import type { Column, SourceFile, WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { ModeIndex } from '@/lib/engine/contract/settings';
+import type { BinaryFacts } from '@/lib/engine/contract/waveform';
+import type { Problem } from '@/lib/kernel/problem';
+import { checkPart } from './check-part';
+import { layoutProblems, modeFaults, waveformColumns } from './columns';
+import { pathProblem } from './file-path';
+import { describe, pointer } from './pointer';
+import { waveformSchema, type RawWaveform } from './sheet-schema';
+
+const known = Object.keys(waveformSchema.shape);
+const missing = (where: string, expected: string, hint?: string): Problem => ({ code: 'claims/missing', where, saw: 'nothing', expected, ...(hint ? { hint } : {}) });
+const refused = (where: string, value: unknown, expected: string, hint?: string): Problem => ({ code: 'claims/not-allowed', where, saw: describe(value), expected, ...(hint ? { hint } : {}) });
+
+/** One entry of `waveforms`: what the hall needs to read its files, or null beside the problems. */
+export function parseWaveform(name: string, value: unknown, problems: Problem[]): WaveformDeclaration | null {
+  const path = ['waveforms', name];
+  const raw = checkPart(waveformSchema, value, path, known, problems);
+  if (raw === null) return null;
+  const before = problems.length;
+  problems.push(...kindProblems(raw, path), ...unitProblems(raw, path));
+  const files = filesOf(raw, path, problems);
+  const columns = columnsOf(raw, path, problems);
+  if (problems.length > before) return null;
+  return declarationOf(name, raw, files, columns);
+}
+
+function declarationOf(name: string, raw: RawWaveform, files: SourceFile[], columns: Column[]): WaveformDeclaration {
+  const domain = raw.domain ?? 'time';
+  const named = columns.some(({ role }) => 'mode' in role && role.mode !== null) || files.some(({ mode }) => mode !== null) || raw.mode !== undefined;
+  return {
+    name,
+    files,
+    columns,
+    domain,
+    variable: raw.variable ?? 'strain',
+    timeUnit: raw.timeUnit ?? (domain === 'time' ? 'M' : '1/M'),
+    amplitudeUnit: raw.amplitudeUnit === 'strain' ? 'strain' : 'rh/M',
+    polarisation: raw.polarisation ?? 'plus-minus-i-cross',
+    negativeM: raw.negativeM ?? null,
+    psi4Factor: raw.psi4Factor ?? 1,
+    mode: raw.mode ?? [2, 2],
+    modeAssumed: !named,
+    totalMassMsun: raw.totalMassMsun ?? null,
+    distanceMpc: raw.distanceMpc ?? null,
+    junkEndM: raw.junkEndM ?? null,
+    binary: factsOf(raw.binary ?? {}),
+  };
+}
+
+/** Without the `undefined` entries that zod's optional fields may carry. */
+const factsOf = (binary: NonNullable<RawWaveform['binary']>): BinaryFacts => Object.fromEntries(Object.entries(binary).filter(([, fact]) => fact !== undefined));
+
+/** What this version does not read or compute yet is refused by name, never guessed at. */
+function kindProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
+  const problems: Problem[] = [];
+  const file = raw.file ?? Object.values(raw.files ?? {})[0] ?? '';
+  const format = raw.format ?? formatByEnding(file);
+  if (format !== 'text') problems.push({ code: 'formats/not-read-yet', where: pointer(...path, raw.format ? 'format' : 'file'), saw: `a file in the format ${format}`, expected: 'text', hint: 'This version reads text columns; export the series as text.' });
+  else if (raw.datasets !== undefined || raw.time !== undefined) problems.push(refused(pointer(...path, raw.datasets ? 'datasets' : 'time'), raw.datasets ?? raw.time, 'no dataset paths for a text file'));
+  if (raw.variable === 'phi2' || raw.variable === 'luminosity')
+    problems.push({ code: 'claims/not-built-yet', where: pointer(...path, 'variable'), saw: describe(raw.variable), expected: '"strain", "news" or "psi4"', hint: 'This version does not compute electromagnetic quantities yet.' });
+  return problems;
+}
+
+export function formatByEnding(file: string): 'text' | 'npy' | 'npz' | 'hdf5' {
+  const ending = /\.([A-Za-z0-9]+)$/.exec(file)?.[1]?.toLowerCase();
+  if (ending === 'npy' || ending === 'npz') return ending;
+  return ending === 'h5' || ending === 'hdf5' || ending === 'hdf' ? 'hdf5' : 'text';
+}
+
+function unitProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
+  const problems: Problem[] = [];
+  const domain = raw.domain ?? 'time';
+  const units = domain === 'time' ? ['M', 's'] : ['1/M', 'Hz'];
+  if (raw.timeUnit !== undefined && !units.includes(raw.timeUnit)) return [refused(pointer(...path, 'timeUnit'), raw.timeUnit, `"${units[0]}" or "${units[1]}" for domain "${domain}"`)];
+  const physicalTime = raw.timeUnit === 's' || raw.timeUnit === 'Hz';
+  const amplitude = raw.amplitudeUnit ?? 'rh/M';
+  if (amplitude === 'geometric' || amplitude === 'perField') problems.push(refused(pointer(...path, 'amplitudeUnit'), amplitude, '"rh/M" or "strain"', 'These units are for φ₂.'));
+  else if (physicalTime !== (amplitude === 'strain'))
+    problems.push(refused(pointer(...path, 'amplitudeUnit'), raw.amplitudeUnit ?? '"rh/M", the house default', physicalTime ? `"strain" with times in "${raw.timeUnit}"` : '"rh/M" with times in M', 'Either both axis and amplitude are physical (s and strain) or both are in units of M.'));
+  if (physicalTime && raw.variable !== undefined && raw.variable !== 'strain') problems.push(refused(pointer(...path, 'variable'), raw.variable, '"strain" for physical units'));
+  if (raw.psi4Factor !== undefined && raw.variable !== 'psi4') problems.push(refused(pointer(...path, 'psi4Factor'), raw.psi4Factor, 'it only beside variable "psi4"'));
+  return problems;
+}
+
+function filesOf(raw: RawWaveform, path: readonly string[], problems: Problem[]): SourceFile[] {
+  if ((raw.file === undefined) === (raw.files === undefined)) {
+    problems.push(raw.file === undefined ? missing(pointer(...path, 'file'), '"file", or "files" for one file a mode') : refused(pointer(...path, 'files'), raw.files, 'either "file" or "files", not both'));
+    return [];
+  }
+  if (raw.file !== undefined) {
+    const fault = pathProblem(raw.file, pointer(...path, 'file'));
+    if (fault) problems.push(fault);
+    return [{ file: raw.file, mode: null }];
+  }
+  return filesByMode(raw, path, problems);
+}
+
+function filesByMode(raw: RawWaveform, path: readonly string[], problems: Problem[]): SourceFile[] {
+  const files: SourceFile[] = [];
+  const seen = new Set<string>();
+  const entries = Object.entries(raw.files ?? {});
+  if (entries.length === 0) problems.push(missing(pointer(...path, 'files'), 'at least one file, such as {"2,2": "l2_m2.txt"}'));
+  if (raw.mode !== undefined) problems.push(refused(pointer(...path, 'mode'), raw.mode, 'no "mode" beside "files", which name theirs'));
+  for (const [key, file] of entries) {
+    const where = pointer(...path, 'files', key);
+    const fault = pathProblem(file, where);
+    if (fault) problems.push(fault);
+    const found = /^\s*(\d{1,2})\s*,\s*(-?\d{1,2})\s*$/.exec(key);
+    if (!found) {
+      problems.push({ code: 'claims/mode', where, saw: describe(key), expected: 'a mode such as "2,2" or "2,-1"' });
+      continue;
+    }
+    const mode: ModeIndex = [Number(found[1]), Number(found[2]) + 0];
+    problems.push(...modeFaults(mode, key, 2, where));
+    if (seen.has(String(mode))) problems.push({ code: 'claims/mode', where, saw: `the mode ${String(mode)} twice`, expected: 'each mode once' });
+    seen.add(String(mode));
+    files.push({ file, mode });
+  }
+  return files;
+}
+
+function columnsOf(raw: RawWaveform, path: readonly string[], problems: Problem[]): Column[] {
+  if (raw.columns === undefined) {
+    problems.push(missing(pointer(...path, 'columns'), 'the columns of the text file, such as ["t", "re22", "im22"]'));
+    return [];
+  }
+  const at = [...path, 'columns'];
+  const domain = raw.domain ?? 'time';
+  const before = problems.length;
+  const columns = waveformColumns(raw.columns, domain, 2, at, problems);
+  if (raw.mode !== undefined) problems.push(...modeFaults(raw.mode, `mode ${raw.mode.join(', ')}`, 2, pointer(...path, 'mode')));
+  if (problems.length > before) return columns;
+  problems.push(...layoutProblems(columns, domain === 'time' ? 't' : 'f', at));
+  const named = columns.some(({ role }) => 'mode' in role && role.mode !== null);
+  const polarised = columns.some(({ role }) => role.kind === 'plus');
+  if (raw.files !== undefined && (named || polarised)) problems.push(refused(pointer(...at), raw.columns, '"re im" or "amplitude phase" without a mode, as "files" name it'));
+  if (raw.mode !== undefined && (named || polarised)) problems.push(refused(pointer(...path, 'mode'), raw.mode, named ? 'no "mode" beside columns that name theirs' : 'no "mode" for plus and cross columns'));
+  if (domain === 'frequency' && polarised) problems.push(refused(pointer(...at), raw.columns, '"re im" or "amplitude phase", since a transform is complex'));
+  return columns;
+}

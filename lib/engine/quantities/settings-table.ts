@@ -1,0 +1,63 @@
+import type { SettingName } from '@/lib/engine/contract/settings';
+
+/**
+ * Every setting of a claim: type, range, unit, house default and meaning (settings.md section 1
+ * and the sections in use). The sheet's schema, the composer's form and the methods pages are
+ * drawn from this table, so a setting is described once.
+ */
+export type SettingShape =
+  | { readonly kind: 'number'; readonly min?: number; readonly max?: number; readonly above?: number }
+  | { readonly kind: 'integer'; readonly min: number; readonly max: number }
+  | { readonly kind: 'choice'; readonly options: readonly (string | boolean)[] }
+  | { readonly kind: 'subset'; readonly options: readonly string[] }
+  | { readonly kind: 'interval'; readonly min?: number; readonly max?: number }
+  | { readonly kind: 'modes' }
+  | { readonly kind: 'response' }
+  | { readonly kind: 'taper'; readonly min: number; readonly max: number }
+  | { readonly kind: 'cosmology' };
+
+export interface SettingRow {
+  readonly name: SettingName;
+  readonly shape: SettingShape;
+  /** Printed after the value; empty for numbers without one. */
+  readonly unit: string;
+  /** In words; what stands in the box when nothing is declared. */
+  readonly houseDefault: string;
+  readonly meaning: string;
+}
+
+const row = (name: SettingName, shape: SettingShape, unit: string, houseDefault: string, meaning: string): SettingRow => ({ name, shape, unit, houseDefault, meaning });
+
+const rows: readonly SettingRow[] = [
+  row('totalMassMsun', { kind: 'number', min: 0.1, max: 1e10 }, 'M☉', 'required for waveforms in M; else the file’s own', 'Total mass of the binary: stretches time and scales amplitude.'),
+  row('massFrame', { kind: 'choice', options: ['detector', 'source'] }, '', 'detector; source for horizons where the mass can be rescaled', 'What the mass means; a source-frame mass enters the response as M(1+z).'),
+  row('redshift', { kind: 'number', min: 0, max: 100 }, '', 'from the distance and the cosmology, for source-frame masses', 'Redshift of the source.'),
+  row('distanceMpc', { kind: 'number', min: 1e-3, max: 1e6 }, 'Mpc', 'required for loudness of waveforms in M; else the file’s own', 'Luminosity distance.'),
+  row('fLowHz', { kind: 'number', above: 0 }, 'Hz', 'first frequency of the noise curve', 'Lower edge of the band, exact.'),
+  row('fHighHz', { kind: 'number', above: 0 }, 'Hz', 'the lower of the noise curve’s end and the lowest Nyquist frequency', 'Upper edge of the band, exact.'),
+  row('maximise', { kind: 'subset', options: ['time', 'phase', 'polarisation', 'inclination', 'templateMass'] }, '', 'by quantity', 'What the second waveform may be moved in, jointly.'),
+  row('inclinationRad', { kind: 'number', min: 0, max: Math.PI }, 'rad', '0 (face-on)', 'Inclination of the line of sight.'),
+  row('azimuthRad', { kind: 'number', min: -2 * Math.PI, max: 2 * Math.PI }, 'rad', '0', 'Azimuth of the line of sight.'),
+  row('response', { kind: 'response' }, '', 'plus; complex for mode content and degeneracy', 'Which polarisation the detector sees, or its two factors.'),
+  row('modes', { kind: 'modes' }, '', 'all', 'The modes used.'),
+  row('lMax', { kind: 'integer', min: 2, max: 12 }, '', 'the highest given', 'Leaves out modes of higher ℓ.'),
+  row('average', { kind: 'choice', options: ['optimal', 'sky', 'sky-orientation', 'volume'] }, '', 'optimal', 'Over which directions the loudness is averaged.'),
+  row('detectors', { kind: 'integer', min: 1, max: 10 }, '', '1', 'Equal detectors in one place: loudness times √N.'),
+  row('armAngleDeg', { kind: 'number', min: 1, max: 90 }, '°', '90', 'Opening angle of the detector’s arms.'),
+  row('taper', { kind: 'taper', min: 0.1, max: 10 }, '', 'auto (1)', 'Multiplies both ramp lengths of the taper.'),
+  row('threshold', { kind: 'number', above: 0 }, '', '8 for loudness', 'The loudness, or the match, at which something counts as seen.'),
+  row('cosmology', { kind: 'cosmology' }, '', 'h0 67.4 km/s/Mpc, omegaM 0.315, flat', 'Expansion used between redshift and distance.'),
+  row('startM', { kind: 'number' }, 'M', 'the end of the start-up burst, else the first sample', 'Start of integrals over time.'),
+  row('window', { kind: 'interval' }, 'M', 'by quantity', 'Interval of time that is used.'),
+  row('integrationFloor', { kind: 'number', above: 0 }, 'rad/M', 'half of ω₂₂ at the start', 'Lowest frequency by which a time integral divides.'),
+  row('includeEnergyBeforeStart', { kind: 'choice', options: [false, true, 'removed'] }, '', 'false', 'Adds what was radiated before the start.'),
+  row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', 'by quantity', 'The mass to which the number is referred.'),
+  row('parameters', { kind: 'integer', min: 1, max: 20 }, '', '1', 'Number of parameters in the criterion.'),
+  row('rateLaw', { kind: 'choice', options: ['euclidean', 'comoving'] }, '', 'euclidean', 'How loudness becomes volume.'),
+  row('templateMassRange', { kind: 'interval', min: 0.01, max: 100 }, '× M', '[0.5, 2]', 'Range of the template’s mass when it is maximised over.'),
+  row('massRatio', { kind: 'number', above: 0, max: 1e6 }, '', 'the waveform’s own', 'Heavier over lighter mass, q ≥ 1.'),
+  row('chi1z', { kind: 'number', min: -1, max: 1 }, '', 'the waveform’s own', 'Spin of the heavier body along the orbital angular momentum.'),
+  row('chi2z', { kind: 'number', min: -1, max: 1 }, '', 'the waveform’s own', 'Spin of the lighter body along the orbital angular momentum.'),
+];
+
+export const settingsTable: ReadonlyMap<SettingName, SettingRow> = new Map(rows.map((entry) => [entry.name, entry]));

@@ -1,0 +1,61 @@
+import type { Claimed } from '@/lib/claims/claimed';
+import type { BudgetLine, MeasuredPoint } from '@/lib/engine/contract/measurement';
+import { expandedOf } from './coverage';
+import type { VerdictWord } from './verdict';
+
+/** A point with what was claimed of it and what the weighing said. */
+export interface WeighedPoint {
+  readonly claimed: Claimed;
+  readonly measured: MeasuredPoint;
+  readonly word: VerdictWord;
+}
+
+/** Qualifiers beside the verdict: digits overstated, narrower scope, and those the measurement brings (lower bound only). */
+export function remarksOf(points: readonly WeighedPoint[], budget: readonly BudgetLine[]): string[] {
+  const measured = points.flatMap((point) => point.measured.remarks ?? []);
+  const remarks = [digitsOverstated(points, budget), narrowerScope(points), ...new Set(measured)];
+  return remarks.filter((remark) => remark !== null);
+}
+
+/**
+ * One guard digit is allowed: a claim overstates when it prints more than d + 1 decimals with
+ * d = ⌈−log₁₀ U⌉, U from the whole budget when all of it is known, else the computation's own.
+ */
+function digitsOverstated(points: readonly WeighedPoint[], budget: readonly BudgetLine[]): string | null {
+  const whole = expandedOf(budget);
+  for (const { claimed, measured, word } of points) {
+    if (word !== 'agrees' || claimed.kind !== 'value' || claimed.digits === null) continue;
+    const own = measured.expandedUncertainty ?? Number.NaN;
+    const uncertainty = budget.length > 0 && Number.isFinite(whole) ? Math.max(whole, own) : own;
+    if (!(uncertainty > 0)) continue;
+    const supported = Math.ceil(-Math.log10(uncertainty)) + 1;
+    if (claimed.digits > supported) return `digits overstated: ${claimed.printed} carries ${decimals(claimed.digits)}, U = ${Number(uncertainty.toPrecision(2))} supports ${decimals(Math.max(0, supported))}`;
+  }
+  return null;
+}
+
+const decimals = (n: number): string => `${n} decimal${n === 1 ? '' : 's'}`;
+
+/** Some points of a sweep hold: says which, by the swept setting. */
+function narrowerScope(points: readonly WeighedPoint[]): string | null {
+  const holding = points.filter((point) => point.word === 'agrees');
+  if (points.length < 2 || holding.length === 0 || holding.length === points.length) return null;
+  const [setting] = Object.keys(points[0]?.measured.at ?? {});
+  if (setting === undefined) return null;
+  return `narrower scope: holds at ${holding.length} of ${points.length} points (${setting} ${runs(points, setting)})`;
+}
+
+/** Neighbouring points that hold are told as a range. */
+function runs(points: readonly WeighedPoint[], setting: string): string {
+  const told: string[] = [];
+  for (let i = 0; i < points.length; i++) {
+    if (points[i]?.word !== 'agrees') continue;
+    let last = i;
+    while (points[last + 1]?.word === 'agrees') last++;
+    const from = points[i]?.measured.at[setting];
+    const to = points[last]?.measured.at[setting];
+    told.push(last === i ? `${from}` : last === i + 1 ? `${from}, ${to}` : `${from} to ${to}`);
+    i = last;
+  }
+  return told.join(', ');
+}
