@@ -8,8 +8,9 @@ const editable: States = EDITABLE_STATES;
 const published: States = PUBLIC_STATES;
 const everywhere: States = SUBMISSION_STATES;
 const without = (...states: SubmissionState[]): States => SUBMISSION_STATES.filter((s) => !states.includes(s));
-const seenByEditor = without('draft', 'checking');
-const seenByReferee = without('draft', 'checking', 'withdrawn', 'expired');
+// Checking is also where a second revision is while its author checks it; before any lodging nothing is shown anyway.
+const seenByEditor = without('draft');
+const seenByReferee = without('draft', 'withdrawn', 'expired');
 const discussed: States = ['in-review', 'deciding', 'back-with-author'];
 const underWay: States = ['draft', 'checking', 'lodged', 'triage', 'in-review', 'deciding', 'back-with-author', 'on-hold'];
 const underReview: States = ['triage', 'in-review', 'deciding'];

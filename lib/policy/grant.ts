@@ -43,9 +43,9 @@ export function may<A extends SubmissionAction>(action: A, actor: Actor, facts: 
   return err(refusal(allowed, facts.state));
 }
 
-/** Reading a review or a record needs a lodged revision, whatever the state says. */
-const hasSomethingToShow = (action: SubmissionAction, facts: SubmissionFacts): boolean =>
-  !(action === 'submission.view-review' || action === 'submission.view-public') || facts.everLodged;
+/** Reviews and records are about a lodged revision, whatever the state says. */
+const NEEDS_LODGED = /^(review\.|record\.|submission\.(view-review|view-public|vary)$)/;
+const hasSomethingToShow = (action: SubmissionAction, facts: SubmissionFacts): boolean => facts.everLodged || !NEEDS_LODGED.test(action);
 
 const isReading = (action: SubmissionAction): boolean => action.includes('.view-') || action.includes('.read-') || action === 'review.see-identities';
 

@@ -1,0 +1,19 @@
+import { and, eq, sql } from 'drizzle-orm';
+import type { Reader } from '@/db/client';
+import { revisionFiles, storedFiles } from '@/db/schema/files';
+import { revisions } from '@/db/schema/submissions';
+
+/** Where bytes with this digest already lie, whoever brought them: they need no second copy. */
+export async function findStorageKey(reader: Reader, sha256: string): Promise<string | undefined> {
+  const [row] = await reader.select({ key: storedFiles.storageKey }).from(storedFiles).where(eq(storedFiles.sha256, sha256)).limit(1);
+  return row?.key;
+}
+
+/** A file of this submission and the revisions that use it. */
+export const listFileUses = (reader: Reader, submissionId: string, fileId: string) =>
+  reader
+    .select({ name: revisionFiles.name, bytes: storedFiles.bytes, sha256: storedFiles.sha256, storageKey: storedFiles.storageKey, lodged: sql<boolean>`${revisions.lodgedAt} is not null` })
+    .from(storedFiles)
+    .innerJoin(revisionFiles, eq(revisionFiles.fileId, storedFiles.id))
+    .innerJoin(revisions, eq(revisions.id, revisionFiles.revisionId))
+    .where(and(eq(storedFiles.submissionId, submissionId), eq(storedFiles.id, fileId)));

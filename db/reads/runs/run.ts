@@ -1,0 +1,59 @@
+import { and, desc, eq } from 'drizzle-orm';
+import type { Reader } from '@/db/client';
+import { runProgress, runResults, runs, type RunKind } from '@/db/schema/runs';
+
+/** All of a run but its figures, which are large and asked for by themselves. */
+const columns = {
+  id: runs.id,
+  submissionId: runs.submissionId,
+  revisionId: runs.revisionId,
+  kind: runs.kind,
+  engine: runs.engine,
+  inputsDigest: runs.inputsDigest,
+  requestedAt: runs.requestedAt,
+  state: runProgress.state,
+  fraction: runProgress.fraction,
+  doing: runProgress.doing,
+  stoppedBecause: runProgress.stoppedBecause,
+  outcome: runResults.outcome,
+  result: runResults.result,
+  resultDigest: runResults.resultDigest,
+  problems: runResults.problems,
+  finishedAt: runResults.finishedAt,
+};
+
+const selectRuns = (reader: Reader) =>
+  reader.select(columns).from(runs).innerJoin(runProgress, eq(runProgress.runId, runs.id)).leftJoin(runResults, eq(runResults.runId, runs.id));
+
+export type RunRow = Awaited<ReturnType<typeof selectRuns>>[number];
+
+export async function findRun(reader: Reader, runId: string): Promise<RunRow | undefined> {
+  const [row] = await selectRuns(reader).where(eq(runs.id, runId));
+  return row;
+}
+
+export async function findLatestRun(reader: Reader, revisionId: string, kind: RunKind): Promise<RunRow | undefined> {
+  const [row] = await selectRuns(reader)
+    .where(and(eq(runs.revisionId, revisionId), eq(runs.kind, kind)))
+    .orderBy(desc(runs.requestedAt))
+    .limit(1);
+  return row;
+}
+
+export const listRuns = (reader: Reader, submissionId: string) =>
+  selectRuns(reader).where(eq(runs.submissionId, submissionId)).orderBy(desc(runs.requestedAt));
+
+export async function findFigures(reader: Reader, runId: string) {
+  const [row] = await reader.select({ figures: runResults.figures }).from(runResults).where(eq(runResults.runId, runId));
+  return row?.figures ?? undefined;
+}
+
+/** What the worker computes from. */
+export async function findRunInputs(reader: Reader, runId: string) {
+  const [row] = await reader
+    .select({ id: runs.id, submissionId: runs.submissionId, revisionId: runs.revisionId, kind: runs.kind, sheet: runs.sheet, inputs: runs.inputs, done: runResults.runId })
+    .from(runs)
+    .leftJoin(runResults, eq(runResults.runId, runs.id))
+    .where(eq(runs.id, runId));
+  return row;
+}

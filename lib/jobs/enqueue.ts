@@ -1,0 +1,21 @@
+import { sql, type SQL } from 'drizzle-orm';
+import { TRIES, type Payload, type TaskName } from './tasks';
+
+/** A transaction, as far as this room knows one. */
+interface SqlRunner {
+  execute(query: SQL): PromiseLike<unknown>;
+}
+
+interface JobOptions {
+  /** A second job under the same key replaces the first while that has not begun. */
+  readonly key?: string;
+  /** Jobs of one queue run one after the other. */
+  readonly queue?: string;
+}
+
+/** Adds a job in the caller's transaction: if the act is undone, so is its job. */
+export async function enqueue<T extends TaskName>(tx: SqlRunner, task: T, payload: Payload<T>, options: JobOptions = {}): Promise<void> {
+  await tx.execute(
+    sql`select public.enqueue_job(${task}, ${JSON.stringify(payload)}::jsonb, ${options.key ?? null}, ${TRIES[task]}, ${options.queue ?? null})`,
+  );
+}

@@ -1,0 +1,41 @@
+import type { Reader } from '@/db/client';
+import { getSubmissionHead, listAuthors } from '@/db/reads/submissions/submission-head';
+import { listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
+import type { Actor } from '@/lib/policy/actor';
+import type { SubmissionFacts } from '@/lib/policy/facts';
+import { formatState } from '@/lib/reviews/states';
+import { asDraftSheet } from './draft-sheet';
+import type { AuthorView, DraftView, RevisionView } from './submission-view';
+import { whatIsAllowed } from './what-is-allowed';
+
+type Head = Omit<DraftView, 'kind' | 'revision' | 'check' | 'beforeLodging'>;
+
+export async function viewHead(reader: Reader, actor: Actor, facts: SubmissionFacts): Promise<Head & { readonly currentRevision: number }> {
+  const head = await getSubmissionHead(reader, facts.submissionId);
+  const authors = await listAuthors(reader, facts.submissionId);
+  return {
+    id: head.id,
+    title: head.title,
+    state: head.state,
+    stateWords: formatState(head.state, head.round),
+    round: head.round,
+    currentRevision: head.currentRevision,
+    stateChangedAt: head.stateChangedAt.toISOString(),
+    authors: authors.map((a): AuthorView => ({ name: a.name, affiliation: a.affiliation, role: a.role, confirmed: a.confirmedAt !== null })),
+    may: whatIsAllowed(actor, facts),
+  };
+}
+
+export async function viewRevision(reader: Reader, row: RevisionRow): Promise<RevisionView> {
+  const files = await listRevisionFiles(reader, row.id);
+  return {
+    id: row.id,
+    number: row.number,
+    title: row.title,
+    statement: row.statement,
+    sheet: asDraftSheet(row.sheet, row),
+    files: files.map(({ id, name, bytes, sha256 }) => ({ id, name, bytes, sha256 })),
+    lodgedAt: row.lodgedAt?.toISOString() ?? null,
+    version: row.version,
+  };
+}
