@@ -1,0 +1,55 @@
+/**
+ * Plots: a Figure becomes panels (pure), a panel becomes options for the plotting library (pure),
+ * and one component mounts it. Every panel of a claim with the same horizontal axis shares a cursor.
+ */
+import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
+
+export interface Panel {
+  readonly title: string;
+  readonly heightPx: number;
+  readonly series: readonly FigureSeries[];
+  readonly scale: 'linear' | 'log';
+  readonly unit: string;
+  /** Only the last panel of a figure prints the horizontal axis. */
+  readonly showsX: boolean;
+}
+
+const isBand = (series: FigureSeries) => series.role === 'band-low' || series.role === 'band-high';
+
+/** What must not share an axis: two units on one plot would invite a wrong reading. */
+const groupKey = (series: FigureSeries) => (series.role === 'residual' ? 'residual' : `${series.axis} ${series.scale} ${series.unit}`);
+
+function scaleOf(series: readonly FigureSeries[]): 'linear' | 'log' {
+  const wanted = series.every((s) => s.scale === 'log');
+  const positive = series.every((s) => s.values.every((v) => v === null || v > 0));
+  return wanted && positive ? 'log' : 'linear';
+}
+
+/** Stacked panels instead of two vertical axes: main traces first, then residual or the other unit. */
+export function panelsOf(figure: Figure): readonly Panel[] {
+  const keys = [...new Set(figure.series.map(groupKey))];
+  const main = keys.find((key) => figure.series.some((s) => groupKey(s) === key && (s.role === 'recomputed' || s.role === 'claimed'))) ?? keys[0];
+  const ordered = [...keys].sort((a, b) => Number(b === main) - Number(a === main));
+  return ordered.map((key, i) => {
+    const series = figure.series.filter((s) => groupKey(s) === key);
+    const lines = series.filter((s) => !isBand(s));
+    return {
+      title: lines.map((s) => s.label).join(', '),
+      heightPx: key === 'residual' ? 104 : i === 0 ? 210 : 150,
+      series: [...lines, ...series.filter(isBand)],
+      scale: scaleOf(series),
+      unit: series[0]?.unit ?? '',
+      showsX: i === ordered.length - 1,
+    };
+  });
+}
+
+/** The claimed values of a sweep are points; claimed traces of waveforms are lines. */
+export const drawnAsPoints = (figure: Figure, series: FigureSeries): boolean =>
+  figure.kind === 'sweep' && series.role === 'claimed';
+
+/** Both traces run together in a waveform plot: there, and only there, the recomputed one is dashed. */
+export const drawnDashed = (figure: Figure, series: FigureSeries): boolean => series.role === 'recomputed' && figure.kind === 'waveforms';
+
+/** Plots of one claim move their cursors together when their horizontal axes mean the same. */
+export const cursorGroup = (claimId: string, figure: Figure): string => `${claimId}/${figure.x.label}/${figure.x.unit}`;

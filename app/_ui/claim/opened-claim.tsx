@@ -1,0 +1,76 @@
+import type { ReactNode } from 'react';
+import type { ResultClaim } from '@/lib/pipeline/result';
+import { ClaimPlots } from '../charts/claim-plots';
+import { Formula } from '../math/formula';
+import { BudgetTable } from './budget-table';
+import { OpenedRow } from './claim-open';
+import { PerfCell } from './claim-table';
+import { FileList } from './file-list';
+import { FindingItem } from './finding-item';
+import { PointTable } from './point-table';
+import type { ClaimHeading, RecordSlots, RecordView } from './record-view';
+import { RouteTable } from './route-table';
+import { RunLog } from './run-log';
+import { SettingTable } from './setting-table';
+
+interface OpenedClaimProps {
+  readonly heading: ClaimHeading;
+  readonly claim: ResultClaim;
+  readonly view: RecordView;
+  readonly slots: RecordSlots;
+  readonly ids: readonly string[];
+}
+
+export function Part({ title, children }: { readonly title: ReactNode; readonly children: ReactNode }) {
+  return (
+    <div className="min-w-0 not-first:mt-6">
+      <h3 className="mb-1.5 text-[16px]/[24px]">{title}</h3>
+      {children}
+    </div>
+  );
+}
+
+/** Everything behind a number: what was declared at the left, what came of it at the right, then across both. */
+export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimProps) {
+  const figures = view.figures[claim.id] ?? [];
+  const beside = figures.filter((figure) => figure.kind === 'waveforms' || figure.kind === 'sweep');
+  const below = figures.filter((figure) => figure.kind !== 'waveforms' && figure.kind !== 'sweep');
+  const files = (view.result?.files ?? []).filter((file) => !heading.files || heading.files.includes(file.name));
+  return (
+    <>
+      <OpenedRow id={ids[0] ?? claim.id}>
+        <td className="c" role="cell" colSpan={4}>
+          {slots.action && <div className="mb-6">{slots.action(claim.id)}</div>}
+          <Part title="Settings"><SettingTable claimId={claim.id} settings={claim.settings} /></Part>
+          {heading.quote && <Part title="As the text says"><p className="max-w-[52ch] border-l-2 border-control pl-3 font-serif italic">“{heading.quote}”</p></Part>}
+          {heading.formula && (
+            <Part title="Formula as used">
+              <Formula tex={heading.formula} display label={`Formula of ${claim.id}`} />
+              {heading.methodHref && <p className="text-small"><a href={heading.methodHref}>How it is computed</a></p>}
+            </Part>
+          )}
+          {files.length > 0 && <Part title="Files"><FileList files={files} /></Part>}
+        </td>
+        <PerfCell />
+        <td className="r" role="cell" colSpan={5}>
+          <ClaimPlots claimId={claim.id} figures={beside} empty={below.length === 0} />
+          {heading.points.length > claim.points.length || claim.points.length > 8 ? <Part title={`All ${claim.points.length} points`}><PointTable claim={claim} heading={heading} /></Part> : null}
+        </td>
+      </OpenedRow>
+      <OpenedRow id={ids[1] ?? `${claim.id}-more`} across>
+        <td role="cell" colSpan={10}>
+          <div className="grid grid-cols-1 gap-x-10 gap-y-6 mid:grid-cols-2 [&>*]:mt-0">
+            {below.length > 0 && <div className="min-w-0"><ClaimPlots claimId={claim.id} figures={below} /></div>}
+            {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /></Part>}
+            <Part title="Two routes"><RouteTable claim={claim} /></Part>
+            <Part title="Findings">
+              {claim.findings.length === 0 ? <p className="text-ui text-ink-2">The checks found nothing to say about these data.</p> : claim.findings.map((finding, i) => <FindingItem key={`${finding.code}${i}`} finding={finding} />)}
+            </Part>
+            <RunLog view={view} claimId={claim.id} />
+          </div>
+          {slots.discussion && <div className="mt-6">{slots.discussion(claim.id)}</div>}
+        </td>
+      </OpenedRow>
+    </>
+  );
+}

@@ -1,0 +1,117 @@
+import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
+import { decimalsForReading, printedDecimals, roundUpUncertainty } from '../math/format-uncertainty';
+import { numberParts } from '../math/format-number';
+import { NumberCell, PrintedNumber, SetNumber, Unknown } from '../math/number-cell';
+import { UnitLabel } from '../math/unit-label';
+import { Skeleton } from '../primitives/page-state';
+import { GapGauge } from '../verdict/gap-gauge';
+import { Remark, VerdictChip } from '../verdict/verdict-chip';
+import { PerfCell } from './claim-table';
+import type { ClaimedPoint, ClaimHeading, RecordSlots } from './record-view';
+
+export interface PointOnScreen {
+  readonly index: number;
+  readonly claimed: ClaimedPoint;
+  readonly result: ResultPoint | null;
+  readonly place: string | null;
+}
+
+interface PointCellsProps {
+  readonly heading: ClaimHeading;
+  readonly claim: ResultClaim | null;
+  readonly point: PointOnScreen;
+  readonly sweep: boolean;
+  readonly first: boolean;
+  /** What stands in the verdict's place while there is no result. */
+  readonly waiting: string | null;
+  readonly slots: RecordSlots;
+}
+
+const toNumber = (printed: string): number => Number(printed.replace(/\(.*$/, '').replace('−', '-').replaceAll(',', ''));
+
+/** Beyond these decimals a plain number is harder to read than its power of ten. */
+const mostColumnDecimals = 8;
+
+function readingStyle(point: PointOnScreen, unitPower: number | null) {
+  const decimals = decimalsForReading(point.claimed.tolerance, printedDecimals(point.claimed.printed), unitPower);
+  const size = Math.abs(point.result?.value ?? toNumber(point.claimed.printed));
+  const plain = size === 0 || (size >= 1e-3 && decimals <= mostColumnDecimals);
+  return { decimals, plain };
+}
+
+/** Cells of one point after the claim's name: where, claimed, tolerance | value, U, apart, verdict. */
+export function PointCells({ heading, claim, point, sweep, first, waiting, slots }: PointCellsProps) {
+  const { claimed, result } = point;
+  const u = result?.expandedUncertainty ?? null;
+  const style = readingStyle(point, heading.scale === 'ln' ? null : u);
+  const At = sweep ? 'th' : 'td';
+  return (
+    <>
+      <At className={`c n lo${point.place ? '' : ' none'}`} data-l="At" role={sweep ? 'rowheader' : 'cell'} scope={sweep ? 'row' : undefined}>
+        {point.place ? <Place text={point.place} /> : <span aria-label="no place: a single value">–</span>}
+      </At>
+      <td className="c n" role="cell" data-l="Claimed"><PrintedNumber printed={claimed.printed} unit={heading.unit} /></td>
+      <td className="c n lo" role="cell" data-l="Tolerance"><Tolerance claimed={claimed} ln={heading.scale === 'ln'} plain={style.plain} unit={heading.unit} /></td>
+      <PerfCell />
+      <td className="r n" role="cell" data-l="Recomputed">
+        <Recomputed point={point} unit={heading.unit} style={style} waiting={waiting} />
+        {result && slots.anchor?.(heading.id, point.index)}
+      </td>
+      <td className="r n lo" role="cell" data-l="U (k = 2)">{result && result.value !== null ? <Uncertainty u={u} unit={heading.unit} /> : <NoNumber />}</td>
+      <td className="r n lo" role="cell" data-l="Apart by"><Apart heading={heading} point={point} style={style} /></td>
+      <td className="r vcell" role="cell" data-l="Verdict">
+        {result ? <VerdictChip state={result.verdict} /> : <VerdictChip state="waiting">{waiting}</VerdictChip>}
+        {first && claim?.remarks.map((remark) => <Remark key={remark} remark={remark} />)}
+        {slots.change?.(heading.id, point.index)}
+      </td>
+    </>
+  );
+}
+
+const NoNumber = () => <span><span className="i" aria-hidden>—</span><span className="sr-only">none</span></span>;
+
+/** `60 M⊙`: digits first, so that a column of masses lines up. */
+function Place({ text }: { readonly text: string }) {
+  const [, digits, rest] = /^(−?[\d,.]+)(.*)$/.exec(text) ?? [];
+  if (digits === undefined) return <span className="whitespace-normal">{text}</span>;
+  const unit = (rest ?? '').trim();
+  return (
+    <span className="whitespace-nowrap">
+      <span className="i">{digits}</span>{' '}
+      {unit === 'M⊙' ? <UnitLabel unit="Msun" /> : unit}
+    </span>
+  );
+}
+
+function Tolerance({ claimed, ln, plain, unit }: { readonly claimed: ClaimedPoint; readonly ln: boolean; readonly plain: boolean; readonly unit: string }) {
+  if (/^[<>≤≥]/.test(claimed.printed)) return <span className="whitespace-normal">a bound has none</span>;
+  if (claimed.tolerance === null) return <Unknown>not set</Unknown>;
+  if (ln) return <NumberCell value={claimed.tolerance * 100} significant={2} unit="%" />;
+  return <NumberCell value={claimed.tolerance} plain={plain && claimed.tolerance >= 1e-7} unit={unit} />;
+}
+
+function Recomputed({ point, unit, style, waiting }: { readonly point: PointOnScreen; readonly unit: string; readonly style: { decimals: number; plain: boolean }; readonly waiting: string | null }) {
+  if (!point.result) return waiting === 'Not run yet' ? <NoNumber /> : <><Skeleton width="7ch" /><span className="sr-only">not computed yet</span></>;
+  return <NumberCell value={point.result.value} decimals={style.decimals} plain={style.plain} unit={unit} unknown="not computable" />;
+}
+
+function Uncertainty({ u, unit }: { readonly u: number | null; readonly unit: string }) {
+  if (u === null) return <Unknown />;
+  return <NumberCell value={roundUpUncertainty(u)} significant={2} unit={unit} />;
+}
+
+function Apart({ heading, point, style }: { readonly heading: ClaimHeading; readonly point: PointOnScreen; readonly style: { decimals: number; plain: boolean } }) {
+  const result = point.result;
+  if (!result || result.apart === null) return <NoNumber />;
+  const ln = heading.scale === 'ln';
+  const parts = ln ? numberParts((Math.exp(result.apart) - 1) * 100, { significant: 2, signed: true }) : numberParts(result.apart, { decimals: style.decimals, plain: style.plain, signed: true });
+  return (
+    <>
+      <span className="ap">{parts ? <><SetNumber parts={parts} />{ln ? ' %' : null}</> : <Unknown />}</span>
+      <GapGauge apart={result.apart} tolerance={result.tolerance} uncertainty={ln ? relative(result) : result.expandedUncertainty} state={result.verdict} />
+    </>
+  );
+}
+
+/** U on the ln scale. */
+const relative = (result: ResultPoint): number | null => (result.value && result.expandedUncertainty !== null ? result.expandedUncertainty / Math.abs(result.value) : null);

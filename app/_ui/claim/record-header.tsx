@@ -1,0 +1,65 @@
+import Link from 'next/link';
+import type { Route } from 'next';
+import type { ReactNode } from 'react';
+import { Icon } from '../primitives/icon';
+import type { RecordPerson, RecordView } from './record-view';
+
+const dot = <span aria-hidden>·</span>;
+
+/** An authenticated iD is shown with its sign and whole address; a typed-in one says that it is. */
+function Person({ person }: { readonly person: RecordPerson }) {
+  const address = person.orcid ? `https://orcid.org/${person.orcid}` : null;
+  return (
+    <span>
+      {person.name}
+      {address && (
+        <>
+          {' '}
+          <a href={address} className="text-ui">
+            {person.orcidAuthenticated && <Icon name="identifier" label="ORCID iD, authenticated:" className="mr-1 inline-block align-[-2px]" />}
+            {address}
+          </a>
+          {!person.orcidAuthenticated && <span className="text-ui text-ink-2"> (typed in, not authenticated)</span>}
+        </>
+      )}
+    </span>
+  );
+}
+
+const affiliations = (people: readonly RecordPerson[]) => [...new Set(people.flatMap((p) => (p.affiliation ? [p.affiliation] : [])))];
+
+interface RecordHeaderProps {
+  readonly view: RecordView;
+  /** Where this page lies: `Register / Record …`. */
+  readonly trail: { readonly href: string; readonly label: string };
+  readonly actions?: ReactNode;
+}
+
+export function RecordHeader({ view, trail, actions }: RecordHeaderProps) {
+  return (
+    <div className="grid items-start gap-x-10 gap-y-4 pt-10 pb-6 stack:grid-cols-[minmax(0,1fr)_auto]">
+      <div className="min-w-0">
+        <p className="mb-2 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-ui text-ink-2">
+          <Link href={trail.href as Route} className="inline-flex min-h-8 items-center">{trail.label}</Link>
+          <span aria-hidden>/</span>
+          <span className="[overflow-wrap:anywhere]">{view.mode === 'public' ? 'Record' : 'Submission'} {view.id}</span>
+        </p>
+        <h1>{view.title}</h1>
+        <p className="mt-2 flex flex-wrap gap-x-4 gap-y-1">
+          {view.people.map((person, i) => <Person key={i} person={person} />)}
+          {affiliations(view.people).length > 0 && <span className="text-ink-2">{affiliations(view.people).join(', ')}</span>}
+        </p>
+        <p className="mt-2 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-ui text-ink-2">
+          <span>{view.state}</span>
+          {view.facts.map((fact, i) => <span key={i} className="flex gap-2.5">{dot}<span>{fact}</span></span>)}
+        </p>
+        {view.revisions.length > 1 && (
+          <nav aria-label="Revisions" className="mt-2 flex flex-wrap gap-x-3 text-ui">
+            {view.revisions.map((revision) => <Link key={revision.href} href={revision.href as Route} aria-current={revision.current ? 'page' : undefined} className="inline-flex min-h-8 items-center aria-[current]:font-semibold aria-[current]:text-ink aria-[current]:no-underline">{revision.label}</Link>)}
+          </nav>
+        )}
+      </div>
+      {actions && <div className="flex flex-wrap gap-2 stack:justify-end">{actions}</div>}
+    </div>
+  );
+}

@@ -1,0 +1,52 @@
+import { decimalsFor, exponentOf, formatNumber, powerOfTen } from './format-number';
+import { unitText } from './units';
+
+/** An uncertainty is rounded up, to two digits: a bar printed too short would say more than is known. */
+export function roundUpUncertainty(u: number): number {
+  if (!Number.isFinite(u) || u <= 0) return u;
+  const power = exponentOf(u) - 1;
+  const scaled = power < 0 ? u * 10 ** -power : u / 10 ** power;
+  // The nudge keeps 2.0 from becoming 2.1 through the last bit of the division.
+  const digits = Math.ceil(scaled - 1e-9);
+  return Number(`${digits}e${power}`);
+}
+
+/** Decimals at which a recomputed value is read against its claim. */
+export function decimalsForReading(tolerance: number | null, printedDecimals: number, u: number | null): number {
+  const needed = tolerance !== null && tolerance > 0 ? decimalsFor(tolerance, 2) : 0;
+  const wanted = Math.max(needed, printedDecimals + 1);
+  return u !== null && u > 0 ? Math.max(Math.min(wanted, decimalsFor(u, 2)), 0) : wanted;
+}
+
+/** Digits after the point of a number as printed by its author: `0.9984(3)` → 4. */
+export function printedDecimals(printed: string): number {
+  const match = /^[^\d]*[\d,]*(?:\.(\d*))?/.exec(printed.trim());
+  const shift = /[eE×x]\s*(?:10\^?)?\s*([+-−]?\d+)/.exec(printed);
+  const decimals = (match?.[1] ?? '').length;
+  return shift ? Math.max(0, decimals - Number((shift[1] ?? '0').replace('−', '-'))) : decimals;
+}
+
+const withUnit = (text: string, unit: string) => (unit ? `${text} ${unitText(unit)}` : text);
+
+/**
+ * `36.297 ± 0.011 Mpc`; `(9.75 ± 0.20) × 10⁻⁵`; a tiny bar beside a plain value keeps its power of
+ * ten: `0.91854503 ± 2.0 × 10⁻⁷`. What is not known is the word, never a zero.
+ */
+export function formatWithUncertainty(value: number | null, uncertainty: number | null, unit = ''): string {
+  if (value === null || !Number.isFinite(value)) return 'not computable';
+  if (uncertainty === null || !Number.isFinite(uncertainty)) return `${withUnit(formatNumber(value), unit)} ± unknown`;
+  if (uncertainty <= 0) return `${withUnit(formatNumber(value), unit)} ± 0`;
+  const u = roundUpUncertainty(uncertainty);
+  const size = Math.max(Math.abs(value), u);
+  if (size < 1e-3 || size >= 1e7) return withUnit(sharedPower(value, u, exponentOf(size)), unit);
+  const decimals = decimalsFor(u, 2);
+  const bar = formatNumber(u, u < 1e-3 ? { significant: 2 } : { decimals });
+  return withUnit(`${formatNumber(value, { decimals, plain: true })} ± ${bar}`, unit);
+}
+
+function sharedPower(value: number, u: number, power: number): string {
+  const decimals = Math.max(0, power - (exponentOf(u) - 1));
+  const scale = 10 ** -power;
+  const mantissa = formatNumber(value * scale, { decimals, plain: true });
+  return `(${mantissa} ± ${formatNumber(u * scale, { decimals, plain: true })}) × ${powerOfTen(power)}`;
+}

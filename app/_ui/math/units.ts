@@ -1,0 +1,23 @@
+/** Units as the sheet writes them, as they are printed, and as they are read aloud. */
+interface Spoken {
+  readonly print: string;
+  readonly say: string;
+}
+const known: Record<string, Spoken> = {
+  Msun: { print: 'M⊙', say: 'solar masses' },
+  M: { print: 'M', say: 'total masses' },
+  rad: { print: 'rad', say: 'radians' },
+  Hz: { print: 'Hz', say: 'hertz' },
+  Mpc: { print: 'Mpc', say: 'megaparsecs' },
+  s: { print: 's', say: 'seconds' },
+  deg: { print: '°', say: 'degrees' },
+  'km/s': { print: 'km/s', say: 'kilometres a second' },
+  'Hz^-1/2': { print: 'Hz⁻¹ᐟ²', say: 'per root hertz' },
+  '1/Hz': { print: 'Hz⁻¹', say: 'per hertz' },
+  'M^2': { print: 'M²', say: 'total masses squared' },
+};
+const aliases: Record<string, string> = { 'M☉': 'Msun', 'M⊙': 'Msun', M_sun: 'Msun', '1/sqrt(Hz)': 'Hz^-1/2', 'Hz^-0.5': 'Hz^-1/2', '1': '', dimensionless: '' };
+
+export const unitKey = (unit: string): string => aliases[unit] ?? unit;
+export const unitText = (unit: string): string => known[unitKey(unit)]?.print ?? unitKey(unit);
+export const unitSpoken = (unit: string): string => known[unitKey(unit)]?.say ?? unitKey(unit);
