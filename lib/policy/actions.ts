@@ -41,6 +41,8 @@ export const SUBMISSION_ACTIONS = {
     referee: [...underReview, ...published], editor: [...underReview, 'back-with-author', ...published], member: published,
   },
 
+  /** An editor becomes the one who holds the submission. */
+  'review.take': { editor: ['triage', 'in-review', 'deciding'] },
   'review.invite': { editor: ['triage', 'in-review'] },
   'review.withdraw-invitation': { editor: ['triage', 'in-review'] },
   'review.answer-invitation': { invited: ['triage', 'in-review'] },
