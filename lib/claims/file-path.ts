@@ -1,20 +1,10 @@
 import type { Problem } from '@/lib/kernel/problem';
+import { pathFault } from '@/lib/kernel/relative-path';
 import { describe } from './pointer';
 
-const expected = 'a relative path inside the sheet’s folder, such as "data/a.txt"';
+export { pathFault };
 
-/** Why a path that a sheet (or an archive) names is refused; null when it stays inside its folder. */
-export function pathFault(path: string): string | null {
-  if (path === '') return 'an empty path';
-  if (path.length > 300) return 'a path of more than 300 characters';
-  if (/[\u0000-\u001f\u007f]/.test(path)) return 'a path with control characters';
-  if (path.includes('\\')) return `${describe(path)} with a backslash`;
-  if (path.startsWith('/') || /^[A-Za-z]:/.test(path)) return `the absolute path ${describe(path)}`;
-  const parts = path.split('/');
-  if (parts.includes('..')) return `${describe(path)}, which climbs out of the folder`;
-  if (parts.includes('.') || parts.includes('')) return `${describe(path)} with an empty or "." part`;
-  return null;
-}
+const expected = 'a relative path inside the sheet’s folder, such as "data/a.txt"';
 
 export function pathProblem(path: string, where: string): Problem | null {
   const saw = pathFault(path);

@@ -1,0 +1,52 @@
+import type { Claim, ClaimSheet } from '@/lib/claims/claim';
+import type { Finding } from '@/lib/engine/contract/finding';
+import type { Measurement } from '@/lib/engine/contract/measurement';
+import { Cancelled, notComputable, type QuantityInputs, type Watch } from '@/lib/engine/contract/quantity';
+import { duplicateFindings, type Inputs } from './read-inputs';
+
+/** One claim through the workshop: stopped by what its inputs show, or measured. */
+export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, withFigures: boolean, watch: Watch): Measurement {
+  const points = (claim.over?.values ?? [null]).map((value) => (claim.over && value !== null ? { [claim.over.setting]: value } : {}));
+  const found = inputFindings(claim, sheet, inputs);
+  const resolved = resolve(claim, inputs);
+  const stopped = found.some((finding) => finding.level === 'stops-lodging');
+  if (stopped || resolved === null) return notComputable(found, points);
+  const measurement = measureOrStop(claim, resolved, withFigures, watch, points);
+  return { ...measurement, findings: distinct([...found, ...measurement.findings]) };
+}
+
+function inputFindings(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Finding[] {
+  const names = [...new Set([claim.of.a, claim.of.b])].filter((name) => name !== undefined);
+  const ofWaveforms = names.flatMap((name) => inputs.waveforms.get(name)?.findings ?? []);
+  const ofNoise = claim.noise === null ? [] : (inputs.noise.get(claim.noise)?.findings ?? []);
+  return [...ofWaveforms, ...ofNoise, ...duplicateFindings(claim, sheet, inputs.files)];
+}
+
+function resolve(claim: Claim, inputs: Inputs): QuantityInputs | null {
+  const a = claim.of.a === undefined ? undefined : (inputs.waveforms.get(claim.of.a)?.input ?? null);
+  const b = claim.of.b === undefined ? undefined : (inputs.waveforms.get(claim.of.b)?.input ?? null);
+  const noise = claim.noise === null ? null : (inputs.noise.get(claim.noise)?.input ?? null);
+  if (a === null || b === null || (claim.noise !== null && noise === null)) return null;
+  return { of: { ...(a ? { a } : {}), ...(b ? { b } : {}) }, noise };
+}
+
+/** A defect of one quantity must not take the other claims with it: it fails closed and says so. */
+function measureOrStop(claim: Claim, inputs: QuantityInputs, withFigures: boolean, watch: Watch, points: readonly Readonly<Record<string, number>>[]): Measurement {
+  const claimed = claim.claimed.map((entry) => (entry.kind === 'value' ? entry.value : null));
+  try {
+    const measurement = claim.quantity.measure({ claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, withFigures }, watch);
+    if (measurement.points.length === points.length) return measurement;
+    return notComputable([defect(claim, `it gave ${measurement.points.length} values for ${points.length} points`)], points);
+  } catch (thrown) {
+    if (thrown instanceof Cancelled) throw thrown;
+    return notComputable([defect(claim, thrown instanceof Error ? thrown.message : String(thrown))], points);
+  }
+}
+
+const defect = (claim: Claim, reason: string): Finding => ({
+  code: 'engine/defect', level: 'stops-lodging', where: claim.id,
+  text: `The computation of ${claim.quantity.id} stopped on a condition it does not foresee: ${reason.slice(0, 300)}.`,
+  fix: 'This is a fault of the program, not of the claim; please report it with the sheet.',
+});
+
+const distinct = (findings: readonly Finding[]): Finding[] => [...new Map(findings.map((finding) => [JSON.stringify(finding), finding])).values()];

@@ -1,0 +1,77 @@
+import type { Claim, ClaimSheet } from '@/lib/claims/claim';
+import { sheetFindings } from '@/lib/claims/sheet-findings';
+import type { Finding } from '@/lib/engine/contract/finding';
+import type { NoiseDeclaration, WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
+import type { Waveform } from '@/lib/engine/contract/waveform';
+import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
+import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
+import { readNoise } from '@/lib/formats/read-noise';
+import { readWaveform } from '@/lib/formats/read-waveform';
+import type { Problem } from '@/lib/kernel/problem';
+import { err, ok, type Result } from '@/lib/kernel/result';
+import type { HashedFiles } from './hashed-files';
+
+/** A named input of the sheet with what was found in it; null when a finding stops its use. */
+export interface Found<T> {
+  readonly input: T | null;
+  readonly findings: readonly Finding[];
+}
+
+export interface Inputs {
+  readonly waveforms: ReadonlyMap<string, Found<Waveform>>;
+  readonly noise: ReadonlyMap<string, Found<NoiseCurve>>;
+  readonly files: HashedFiles;
+}
+
+/** Every file of the sheet, one after another so that memory holds one table at a time while it grows. */
+export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: (doing: string) => void): Promise<Result<Inputs, Problem[]>> {
+  const problems: Problem[] = [];
+  const waveforms = new Map<string, Found<Waveform>>();
+  const noise = new Map<string, Found<NoiseCurve>>();
+  for (const declaration of sheet.waveforms.values()) {
+    onFile(`reading ${declaration.name}`);
+    const read = await readWaveform(declaration, files.open);
+    if (read.ok) waveforms.set(declaration.name, { input: read.value.waveform, findings: [...sheetFindings(declaration), ...read.value.findings] });
+    else problems.push(...read.error);
+  }
+  for (const declaration of sheet.noise.values()) {
+    onFile(`reading ${declaration.name}`);
+    const read = await readCurve(declaration, files);
+    if (read.ok) noise.set(declaration.name, read.value);
+    else problems.push(...read.error);
+  }
+  return problems.length > 0 ? err(once(problems)) : ok({ waveforms, noise, files });
+}
+
+async function readCurve(declaration: NoiseDeclaration, files: HashedFiles): Promise<Result<Found<NoiseCurve>, Problem[]>> {
+  if (declaration.kind === 'built-in') return ok({ input: builtInCurve(declaration.curve) ?? null, findings: [] });
+  const read = await readNoise(declaration, files.open);
+  if (!read.ok) return read;
+  if (read.value.noise === null) return ok({ input: null, findings: read.value.findings });
+  const curve = tabulatedCurve(read.value.noise);
+  return ok(curve.ok ? { input: curve.value.curve, findings: curve.value.findings } : { input: null, findings: curve.error });
+}
+
+/** Two names may share one file; its faults are told once. */
+function once(problems: readonly Problem[]): Problem[] {
+  return [...new Map(problems.map((problem) => [JSON.stringify(problem), problem])).values()];
+}
+
+/** V28: two files of different names that are the same bytes, in the two roles of one claim. */
+export function duplicateFindings(claim: Claim, sheet: ClaimSheet, files: HashedFiles): Finding[] {
+  const of = (role: 'a' | 'b'): WaveformDeclaration | undefined => sheet.waveforms.get(claim.of[role] ?? '');
+  const [a, b] = [of('a'), of('b')];
+  if (!a || !b || claim.of.a === claim.of.b) return [];
+  return a.files.flatMap((first) =>
+    b.files.flatMap((second): Finding[] => {
+      const same = first.file !== second.file && files.sha256(first.file) !== null && files.sha256(first.file) === files.sha256(second.file);
+      if (!same) return [];
+      return [{
+        code: 'formats/duplicate-files', level: 'stops-lodging', where: `${a.name}, ${b.name}`,
+        text: `The files ${first.file} and ${second.file} are identical byte for byte, though the sheet gives them as two waveforms.`,
+        fix: 'Attach the file that was meant, or name one file in both places if the same data are meant.',
+      }];
+    }),
+  );
+}

@@ -1,0 +1,78 @@
+import type { Catalogue } from '@/lib/claims/catalogue';
+import type { ClaimSheet } from '@/lib/claims/claim';
+import { parseClaimSheet } from '@/lib/claims/parse-sheet';
+import type { Figure } from '@/lib/engine/contract/measurement';
+import { Cancelled } from '@/lib/engine/contract/quantity';
+import { ENGINE_VERSION } from '@/lib/engine/version';
+import type { OpenFile } from '@/lib/formats/open-file';
+import type { Problem } from '@/lib/kernel/problem';
+import { err, ok, type Result } from '@/lib/kernel/result';
+import { HashedFiles, type StreamingDigest } from './hashed-files';
+import { measureClaim } from './measure-claim';
+import { readInputs, type Inputs } from './read-inputs';
+import type { FiguresByClaim, ResultClaim, ResultDocument } from './result';
+import { weighClaim } from './weigh-claim';
+
+/**
+ * The pipeline walks one sheet from the hall to the weighing room. It is pure: files, digests,
+ * progress and the wish to stop are handed in, and the same input gives the same bytes.
+ */
+export interface Source {
+  /** Bytes of `claim.json`, or its JSON already parsed. */
+  readonly sheetJson: Uint8Array | unknown;
+  readonly openFile: OpenFile;
+}
+
+export interface ReproduceOptions {
+  readonly withFigures: boolean;
+  readonly onProgress: (fraction: number, doing: string) => void;
+  readonly cancelled: () => boolean;
+  /** A fresh SHA-256. */
+  readonly digest: () => StreamingDigest;
+}
+
+export interface Reproduced {
+  readonly result: ResultDocument;
+  readonly figures: FiguresByClaim;
+}
+
+/** Share of the progress bar that reading files takes. */
+const readingShare = 0.1;
+
+export async function reproduceWith(catalogue: Catalogue, source: Source, options: ReproduceOptions): Promise<Result<Reproduced, Problem[]>> {
+  const sheet = parseClaimSheet(source.sheetJson, catalogue);
+  if (!sheet.ok) return sheet;
+  try {
+    const files = new HashedFiles(source.openFile, options.digest);
+    const inputs = await readInputs(sheet.value, files, fileProgress(sheet.value, options));
+    return inputs.ok ? ok(measureAll(sheet.value, inputs.value, options)) : inputs;
+  } catch (thrown) {
+    if (thrown instanceof Cancelled) return err([{ code: 'pipeline/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' }]);
+    throw thrown;
+  }
+}
+
+function fileProgress(sheet: ClaimSheet, options: ReproduceOptions): (doing: string) => void {
+  const count = sheet.waveforms.size + sheet.noise.size;
+  let done = 0;
+  return (doing) => {
+    if (options.cancelled()) throw new Cancelled();
+    options.onProgress((readingShare * done++) / Math.max(1, count), doing);
+  };
+}
+
+function measureAll(sheet: ClaimSheet, inputs: Inputs, options: ReproduceOptions): Reproduced {
+  const figures: Record<string, readonly Figure[]> = {};
+  const share = (1 - readingShare) / sheet.claims.length;
+  const claims = sheet.claims.map((claim, i): ResultClaim => {
+    if (options.cancelled()) throw new Cancelled();
+    const base = readingShare + i * share;
+    const onProgress = (fraction: number, doing: string) => options.onProgress(base + share * Math.min(1, Math.max(0, fraction)), `${claim.id}: ${doing}`);
+    onProgress(0, claim.quantity.title);
+    const measurement = measureClaim(claim, sheet, inputs, options.withFigures, { onProgress, cancelled: options.cancelled });
+    if (options.withFigures) figures[claim.id] = measurement.figures;
+    return weighClaim(claim, measurement);
+  });
+  options.onProgress(1, 'done');
+  return { result: { format: 'counterfoil-result/1', engine: ENGINE_VERSION, title: sheet.title, files: inputs.files.files(), claims }, figures };
+}

@@ -1,0 +1,63 @@
+import type { Finding, FindingLevel } from '@/lib/engine/contract/finding';
+import type { ResultClaim, ResultDocument, ResultPoint } from '@/lib/pipeline/result';
+import { submissionVerdict, type VerdictWord } from '@/lib/verdicts/verdict';
+import { brief, withUncertainty } from './print-numbers';
+
+const verdictWords: Record<VerdictWord, string> = { agrees: 'agrees', differs: 'differs', unsettled: 'unsettled', 'not-computable': 'not computable', 'routes-disagree': 'routes disagree' };
+const levelWords: Record<FindingLevel, string> = { 'stops-lodging': 'stops lodging', 'needs-answer': 'needs an answer', 'worth-a-look': 'worth a look', note: 'note' };
+const summary = { 'all-agree': 'All claims agree.', 'some-agree': 'Some claims agree.', 'none-agrees': 'No claim agrees.', unsettled: 'Unsettled.' };
+
+/** The result as a table for people. */
+export function printResult(result: ResultDocument): string {
+  const heading = `${result.title === '' ? 'Claim sheet' : result.title}  (engine ${result.engine})`;
+  const closing = summary[submissionVerdict(result.claims.map((claim) => claim.verdict))];
+  return `${[heading, ...result.claims.map(printClaim), closing].join('\n\n')}\n`;
+}
+
+function printClaim(claim: ResultClaim): string {
+  const unit = claim.unit === '' ? '' : ` in ${claim.unit}`;
+  const swept = Object.keys(claim.points[0]?.at ?? {});
+  const header = [...swept, 'claimed', `recomputed ± U${unit}`, 'T', 'verdict'];
+  const lines = [
+    `${claim.id}  ${claim.quantity}: ${verdictWords[claim.verdict]}`,
+    ...columns([header, ...claim.points.map((point) => pointCells(point, swept))]).map((line) => `  ${line}`),
+    ...claim.remarks.map((remark) => `  Remark: ${remark}`),
+    `  Stated uncertainty: ${coverageWords(claim)}`,
+    ...(claim.assumed.length > 0 ? [`  Assumed: ${assumedWords(claim)}`] : []),
+    ...claim.findings.flatMap(findingLines),
+  ];
+  return lines.join('\n');
+}
+
+function pointCells(point: ResultPoint, swept: readonly string[]): string[] {
+  return [...swept.map((name) => String(point.at[name])), point.printed, withUncertainty(point.value, point.expandedUncertainty), brief(point.tolerance), verdictWords[point.verdict]];
+}
+
+function columns(rows: readonly (readonly string[])[]): string[] {
+  const widths = rows[0]?.map((_, k) => Math.max(...rows.map((row) => row[k]?.length ?? 0))) ?? [];
+  return rows.map((row) => row.map((cell, k) => cell.padEnd(widths[k] ?? 0)).join('   ').trimEnd());
+}
+
+function coverageWords({ coverage }: ResultClaim): string {
+  if (coverage.state === 'unknown') return `unknown (not available: ${coverage.missing?.join(', ') ?? 'the budget'})`;
+  return coverage.state === 'covered' ? 'covered' : `understated${coverage.factor === undefined ? '' : ` (×${coverage.factor})`}`;
+}
+
+function assumedWords(claim: ResultClaim): string {
+  const used = new Map(claim.settings.map((setting) => [setting.name, setting]));
+  return claim.assumed
+    .map((name) => {
+      const setting = used.get(name);
+      if (!setting || setting.value === undefined || setting.value === null) return name;
+      const value = typeof setting.value === 'object' ? JSON.stringify(setting.value) : String(setting.value);
+      return `${name} = ${value}${setting.unit ? ` ${setting.unit}` : ''}`;
+    })
+    .join(', ');
+}
+
+function findingLines(finding: Finding): string[] {
+  const first = `  ${capital(levelWords[finding.level])}: ${finding.text} [${finding.code}, ${finding.where}]`;
+  return finding.fix === undefined ? [first] : [first, `    Next: ${finding.fix}`];
+}
+
+const capital = (word: string): string => word.charAt(0).toUpperCase() + word.slice(1);
