@@ -40,16 +40,22 @@ const processor = unified()
   .use(makeFormulasReachable);
 
 /** A document's own headings start below those of the page it stands on. */
-const components = { h1: 'h3', h2: 'h3', h3: 'h4', h4: 'h5', h5: 'h6' } as const;
+const headings = {
+  2: { h1: 'h2', h2: 'h2', h3: 'h3', h4: 'h4', h5: 'h5' },
+  3: { h1: 'h3', h2: 'h3', h3: 'h4', h4: 'h5', h5: 'h6' },
+} as const;
+export type FirstHeading = keyof typeof headings;
 
 const link = ({ href, children }: { readonly href?: string; readonly children?: ReactNode }) =>
-  href?.startsWith('#') ? <a href={href}>{children}</a> : <a href={href} rel="nofollow noopener noreferrer ugc">{children}</a>;
+  href?.startsWith('#') || (href?.startsWith('/') && !href.startsWith('//')) ? <a href={href}>{children}</a> : <a href={href} rel="nofollow noopener noreferrer ugc">{children}</a>;
 
 /** Markdown with maths, from anyone: raw HTML is off, and sanitising comes before the formulas. */
-export function renderMarkdown(source: string): ReactNode {
+export function renderMarkdown(source: string, firstHeading: FirstHeading = 3): ReactNode {
   if (source.length > longestText) return <pre className="overflow-x-auto whitespace-pre-wrap">{source}</pre>;
   const tree = processor.runSync(processor.parse(source));
-  return toJsxRuntime(tree, { Fragment, jsx, jsxs, components: { ...components, a: link } }) as ReactNode;
+  return toJsxRuntime(tree, { Fragment, jsx, jsxs, components: { ...headings[firstHeading], a: link } }) as ReactNode;
 }
 
-export const Prose = ({ source }: { readonly source: string }) => <div className="prose">{renderMarkdown(source)}</div>;
+export const Prose = ({ source, firstHeading }: { readonly source: string; readonly firstHeading?: FirstHeading }) => (
+  <div className="prose">{renderMarkdown(source, firstHeading)}</div>
+);
