@@ -16,11 +16,12 @@ interface Weighed {
 /** A claim and its measurement as one line of the result, every field in its fixed place. */
 export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim {
   const stopped = measurement.findings.some((finding) => finding.level === 'stops-lodging');
-  const points = measurement.points.map((measured, i): Weighed => {
-    const claimed = claim.claimed[i]!;
+  const points = measurement.points.flatMap((measured, i): Weighed[] => {
+    const claimed = claim.claimed[i];
+    if (!claimed) return [];
     const { scale, naturalTolerance } = claim.quantity;
     const weighing = { claimed, measured, routeBRan: measurement.routeBPoints.includes(i), scale, declaredTolerance: claim.tolerance, naturalTolerance, stopped };
-    return { claimed, measured, verdict: decideVerdict(weighing) };
+    return [{ claimed, measured, verdict: decideVerdict(weighing) }];
   });
   const worst = points.reduce((far, next) => (farness(next) > farness(far) ? next : far));
   return {

@@ -46,7 +46,7 @@ export class NumberReader {
     }
     this.significant = n;
     const magnitude = n <= maxExactDigits ? compose(lead, rest, tail, n, exponent) : Number.NaN;
-    const value = magnitude === magnitude ? magnitude : slowly(bytes, first, i);
+    const value = Number.isNaN(magnitude) ? slowly(bytes, first, i) : magnitude;
     this.value[0] = sign === 45 ? -value : value;
     return i;
   }
