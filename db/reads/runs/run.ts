@@ -1,6 +1,7 @@
 import { and, desc, eq } from 'drizzle-orm';
 import type { Reader } from '@/db/client';
 import { runProgress, runResults, runs, type RunKind } from '@/db/schema/runs';
+import { revisions } from '@/db/schema/submissions';
 
 /** All of a run but its figures, which are large and asked for by themselves. */
 const columns = {
@@ -51,8 +52,9 @@ export async function findFigures(reader: Reader, runId: string) {
 /** What the worker computes from. */
 export async function findRunInputs(reader: Reader, runId: string) {
   const [row] = await reader
-    .select({ id: runs.id, submissionId: runs.submissionId, revisionId: runs.revisionId, kind: runs.kind, sheet: runs.sheet, inputs: runs.inputs, done: runResults.runId })
+    .select({ id: runs.id, submissionId: runs.submissionId, revisionNumber: revisions.number, kind: runs.kind, sheet: runs.sheet, inputs: runs.inputs, done: runResults.runId })
     .from(runs)
+    .innerJoin(revisions, eq(revisions.id, runs.revisionId))
     .leftJoin(runResults, eq(runResults.runId, runs.id))
     .where(eq(runs.id, runId));
   return row;

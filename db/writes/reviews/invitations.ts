@@ -20,6 +20,11 @@ export async function takeSubmission(tx: Transaction, grant: SubmissionGrant<'re
     .onConflictDoUpdate({ target: assignments.submissionId, set: { editorId, takenAt: sql`now()` } });
 }
 
+/** Who asks the first referee holds the submission, unless somebody does already. */
+export async function takeIfFree(tx: Transaction, grant: SubmissionGrant<'review.invite'>): Promise<void> {
+  await tx.insert(assignments).values({ submissionId: grant.submissionId, editorId: whoActs(grant) }).onConflictDoNothing({ target: assignments.submissionId });
+}
+
 export interface NewInvitation {
   readonly refereeId: string;
   readonly slot: string;

@@ -1,0 +1,95 @@
+import { z } from 'zod';
+import { saveRevision } from '@/db/writes/submissions/save-revision';
+import { storeFile, type UploadedFile } from '@/db/writes/files/store-file';
+import { createSubmission } from '@/db/writes/submissions/create-submission';
+import { parseSheetText } from '@/lib/claims/sheet-text';
+import type { Problem } from '@/lib/kernel/problem';
+import { ok } from '@/lib/kernel/result';
+import type { Actor } from '@/lib/policy/actor';
+import { mayGenerally } from '@/lib/policy/grant';
+import { actGenerally, actOnSubmission } from '@/lib/services/act';
+import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
+import { currentRevision } from '@/lib/services/files/add-file';
+import { discardStaged, MAX_FILES, stageFile, type Incoming } from '@/lib/services/files/stage-file';
+import { LODGED_ALREADY } from './update-draft';
+
+/** Enough shape to be edited; what the words mean is judged by the check, with every problem listed. */
+const loadable = z.looseObject({
+  format: z.literal('counterfoil-claim/1'),
+  title: z.string().max(300).default(''),
+  statement: z.string().max(100_000).default(''),
+  waveforms: z.record(z.string(), z.looseObject({})).default({}),
+  noise: z.record(z.string(), z.looseObject({})).default({}),
+  claims: z.array(z.looseObject({})).max(200).default([]),
+});
+type Loadable = z.infer<typeof loadable>;
+
+export function readSheetText(text: string): Outcome<Loadable> {
+  const json = parseSheetText(new TextEncoder().encode(text));
+  if (!json.ok) return fail('invalid', 'claim.json cannot be read.', json.error);
+  const sheet = loadable.safeParse(json.value);
+  if (sheet.success) return ok(sheet.data);
+  const problems = sheet.error.issues.map((i): Problem => ({ code: 'claims/shape', where: `/${i.path.map(String).join('/')}`, saw: 'something else', expected: i.message }));
+  return fail('invalid', 'claim.json is not a claim sheet of the format counterfoil-claim/1.', problems);
+}
+
+/** Fills the draft from the text of a `claim.json`; its files are added by themselves. */
+export function loadSheet(actor: Actor, submissionId: string, input: { readonly version: number; readonly claimJson: string }): Promise<Outcome<{ readonly version: number }>> {
+  return actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
+    if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
+    const sheet = readSheetText(input.claimJson);
+    if (!sheet.ok) return sheet;
+    const row = await currentRevision(tx, submissionId);
+    if (!row) return { ok: false, error: NOT_FOUND };
+    const { title, statement } = sheet.value;
+    const version = await saveRevision(tx, grant, { revisionId: row.id, version: input.version }, { title, statement, sheet: sheet.value });
+    if (version === undefined) return fail('conflict', `Somebody saved version ${row.version} meanwhile; this sheet was loaded on version ${input.version}.`);
+    note({ revision: row.number, version, loaded: true });
+    return ok({ version });
+  });
+}
+
+export interface Folder {
+  /** `claim.json`, once it has come by; files may come before or after it. */
+  readonly claimJson: () => string | null;
+  readonly files: AsyncIterable<Incoming>;
+}
+
+/** A whole claim-sheet folder at once: a draft with sheet and files, or nothing. */
+export async function createFromFolder(actor: Actor, folder: Folder): Promise<Outcome<{ readonly id: string }>> {
+  const allowed = mayGenerally('submission.create', actor);
+  if (!allowed.ok) return allowed;
+  const staged: UploadedFile[] = [];
+  const made = await stageAll(folder.files, staged).then(
+    (all) => (all.ok ? recordFolder(actor, folder.claimJson(), staged) : all),
+    async (cause: unknown) => {
+      await discardStaged(staged);
+      throw cause;
+    },
+  );
+  if (!made.ok) await discardStaged(staged);
+  return made;
+}
+
+async function stageAll(files: AsyncIterable<Incoming>, staged: UploadedFile[]): Promise<Outcome<null>> {
+  for await (const file of files) {
+    if (staged.length >= MAX_FILES) return fail('limit', `A submission holds at most ${MAX_FILES} files.`);
+    const one = await stageFile(file);
+    if (!one.ok) return one;
+    staged.push(one.value);
+  }
+  return ok(null);
+}
+
+async function recordFolder(actor: Actor, claimJson: string | null, files: readonly UploadedFile[]): Promise<Outcome<{ readonly id: string }>> {
+  if (claimJson === null) return fail('invalid', 'No claim.json came with the files. Send it as the field "claim".');
+  const sheet = readSheetText(claimJson);
+  if (!sheet.ok) return sheet;
+  return actGenerally({ actor, action: 'submission.create' }, async ({ tx, grant, note }) => {
+    const { title, statement } = sheet.value;
+    const made = await createSubmission(tx, grant, { title, statement, sheet: sheet.value });
+    for (const file of files) await storeFile(tx, grant, made, file);
+    note('submission', made.submissionId, { files: files.length });
+    return ok({ id: made.submissionId });
+  });
+}

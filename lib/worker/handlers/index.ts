@@ -1,0 +1,8 @@
+import type { TaskName } from '@/lib/jobs/tasks';
+import type { Handler } from './handler';
+import { runSubmission } from './run-submission';
+
+/** Which handler answers which job; one file each. */
+export const HANDLERS: Readonly<Partial<Record<TaskName, Handler>>> = {
+  'run-submission': runSubmission,
+};

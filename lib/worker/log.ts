@@ -1,0 +1,6 @@
+import { Logger } from 'graphile-worker';
+
+/** The queue tells of each job it takes; only what a person should look at is kept. */
+export const quietLogger = new Logger(() => (level, message) => {
+  if (level === 'error' || level === 'warning') console.error(JSON.stringify({ level, at: new Date().toISOString(), where: 'queue', message }));
+});
