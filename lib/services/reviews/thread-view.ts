@@ -36,8 +36,8 @@ export interface AnchorView {
   /** The number when the thread was opened; null values where the anchor is a sweep as a whole. */
   readonly opened: AnchoredNumber;
   readonly openedOnRevision: number;
-  /** Against the newest finished run that the reader may see: same, changed (was → now), lost. */
-  readonly now: ReAnchoring;
+  /** Against the newest lodged revision's numbers: same, changed (was → now), lost; waiting while they are computed. */
+  readonly now: ReAnchoring | { readonly standing: 'waiting' };
 }
 
 export interface ThreadView {
