@@ -1,0 +1,31 @@
+import type { Band } from '../../contract/route';
+import { frequencyNodes, type FrequencyNodes } from './frequency-panels';
+import type { RouteBKnobs, Source } from './spectrum';
+
+export interface NodeWishes {
+  /** Read every mode of each source, not only its line of sight. */
+  readonly allModes?: boolean;
+  /** Lag in s between records that no shift will remove. */
+  readonly extraLagS?: number;
+}
+
+/**
+ * Quadrature nodes that serve several sources at once, up to where each has ended: at the band's
+ * edge, at its Nyquist frequency, or where its content ends.
+ * Shape:  ascending nodes; empty when nothing lies in the band.
+ * Units:  Hz.
+ * Error:  see frequencyNodes and liveHigh.
+ * Fails:  never.
+ * Source: settings.md rule 2.5.
+ */
+export function nodesFor(sources: readonly Source[], band: Band, knobs: RouteBKnobs, wishes: NodeWishes = {}): FrequencyNodes {
+  const { noise, fLowHz, fHighHz } = band;
+  const psd = (f: number): number => noise.psd(Math.min(Math.max(f, noise.fLowHz), noise.fHighHz));
+  const top = Math.min(fHighHz, Math.max(...sources.map((source) => source.nyquistHz)));
+  const nowhere = { f: new Float64Array(0), weight: new Float64Array(0) };
+  if (!(top > fLowHz)) return nowhere;
+  const lives = sources.map((source) => (source.nyquistHz > fLowHz ? source.liveHighHz(psd, fLowHz, top, wishes.allModes ?? false) : fLowHz));
+  const high = Math.min(Math.max(...lives), top);
+  const lag = Math.max(...sources.map((source) => source.spanS)) + (wishes.extraLagS ?? 0);
+  return frequencyNodes(band, high, Math.max(lag, 1e-9), knobs.quadrature);
+}
