@@ -3,7 +3,7 @@ import path from 'node:path';
 import { describe, expect, it } from 'vitest';
 import { ROOT, filesIn } from './support/source-files';
 
-const FORBIDDEN = /^(utils?|helpers?|common|misc|index|shared|stuff)$/;
+const FORBIDDEN = /^(utils?|helpers?|common|misc|stuff)$/;
 /** Names that the framework prescribes, and folders such as `[id]`, `(desk)` and `_ui`. */
 const KEBAB = /^[a-z0-9]+(-[a-z0-9]+)*$/;
 const FRAMEWORK = /^(\[{1,2}(\.{3})?[a-zA-Z]+\]{1,2}|\([a-z-]+\)|_[a-z]+)$/;

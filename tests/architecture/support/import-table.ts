@@ -44,6 +44,7 @@ export const TABLE: Readonly<Record<string, Rule>> = {
 export const DOORS: readonly { readonly from: string; readonly to: string; readonly why: string }[] = [
   { from: 'db/schema/', to: 'lib/reviews/', why: 'the words a column may hold are the list of the domain, written once' },
   { from: 'db/schema/', to: 'lib/badges/', why: 'the same' },
+  { from: 'lib/worker/main', to: 'lib/tools/process', why: 'the manners of a supervised process are written once' },
 ];
 
 /** Packages that stay behind a room, whatever the table says. */
