@@ -11,9 +11,9 @@ type Fault = Omit<Problem, 'where'>;
 const expected = 'a number, a string such as "0.9984" or "0.9984(3)", {"value": …, "uncertainty": …}, {"above": …} or {"below": …}';
 const fault = (saw: string, hint?: string): Result<never, Fault> => err({ code: 'claims/claimed', saw, expected, ...(hint ? { hint } : {}) });
 
-/** One claimed entry of the sheet. The inverse is `formatClaimed`. */
+/** One claimed entry of the sheet; a negative zero is zero. The inverse is `formatClaimed`. */
 export function parseClaimed(raw: unknown): Result<Claimed, Fault> {
-  if (typeof raw === 'number') return Number.isFinite(raw) ? ok({ kind: 'value', value: raw, uncertainty: null, digits: null, printed: String(raw) }) : fault(describe(raw));
+  if (typeof raw === 'number') return Number.isFinite(raw) ? ok({ kind: 'value', value: raw + 0, uncertainty: null, digits: null, printed: String(raw) }) : fault(describe(raw));
   if (typeof raw === 'string') return parsePrinted(raw);
   if (typeof raw !== 'object' || raw === null || Array.isArray(raw)) return fault(describe(raw));
   const names = Object.keys(raw).sort().join(' ');
@@ -56,7 +56,7 @@ function parsePrinted(raw: string): Result<Claimed, Fault> {
   if (!found || (found[2] !== undefined && found[4] !== undefined)) return fault(...misprint(text));
   const mantissa = found[1] ?? '';
   const exponent = Number(found[3] ?? 0);
-  const value = Number(`${mantissa}e${exponent}`);
+  const value = Number(`${mantissa}e${exponent}`) + 0;
   const digits = (mantissa.split('.')[1]?.length ?? 0) - exponent;
   if (!Number.isFinite(value) || Math.abs(digits) > 400) return fault(`${describe(text)}, outside the range of double precision`);
   const last = found[2] ?? found[4];

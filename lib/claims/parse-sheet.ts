@@ -24,7 +24,7 @@ export function parseClaimSheet(sheetJson: Uint8Array | unknown, catalogue: Cata
 function parseSheetValue(value: unknown, catalogue: Catalogue): Result<ClaimSheet, Problem[]> {
   const problems: Problem[] = [];
   const sheet = checkPart(sheetSchema, value, [], known, problems);
-  const raw = sheet ?? partsOf(value);
+  const raw = partsOf(value);
   const waveforms = parseNamed('waveforms', raw.waveforms, (name, entry) => parseWaveform(name, entry, problems), problems);
   const noise = parseNamed('noise', raw.noise, (name, entry) => parseNoise(name, entry, catalogue.curves, problems), problems);
   problems.push(...caseClashes(pathsOf(waveforms, noise)));
@@ -35,7 +35,7 @@ function parseSheetValue(value: unknown, catalogue: Catalogue): Result<ClaimShee
   return ok({ title: sheet.title ?? '', statement: sheet.statement ?? '', waveforms: present(waveforms), noise: present(noise), claims: whole });
 }
 
-/** Even when the sheet's own words are off, its parts are judged: a person wants the whole list. */
+/** Taken from the value itself: the parts are judged even when the sheet's own words are off, and no name is lost on the way. */
 function partsOf(value: unknown): { waveforms?: Record<string, unknown>; noise?: Record<string, unknown>; claims: unknown[] } {
   const object = (part: unknown): Record<string, unknown> => (typeof part === 'object' && part !== null && !Array.isArray(part) ? (part as Record<string, unknown>) : {});
   const { waveforms, noise, claims } = object(value);

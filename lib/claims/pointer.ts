@@ -12,7 +12,16 @@ export function describe(value: unknown): string {
 }
 
 function short(value: unknown): string {
-  const text = JSON.stringify(value) ?? String(value);
+  const text = textOf(value);
   const printable = text.replace(/[\u007f-\u009f\u200b-\u200f\u2028-\u202e\u2066-\u2069]/g, (c) => `\\u${c.charCodeAt(0).toString(16).padStart(4, '0')}`);
   return printable.length > shown ? `${printable.slice(0, shown)}…` : printable;
+}
+
+/** A value nested without end overflows the stack of JSON.stringify; it is not worth printing. */
+function textOf(value: unknown): string {
+  try {
+    return JSON.stringify(value) ?? String(value);
+  } catch {
+    return 'a value that cannot be printed';
+  }
 }

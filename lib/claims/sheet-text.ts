@@ -3,6 +3,7 @@ import { err, ok, type Result } from '@/lib/kernel/result';
 import { describe } from './pointer';
 
 const maxBytes = 4 * 2 ** 20;
+const maxDepth = 64;
 
 /** Bytes of `claim.json` to a JSON value; a name given twice is refused, since only one of the two would count. */
 export function parseSheetText(bytes: Uint8Array): Result<unknown, Problem[]> {
@@ -19,8 +20,8 @@ export function parseSheetText(bytes: Uint8Array): Result<unknown, Problem[]> {
   } catch (thrown) {
     return refuse('claims/not-json', placeOf(thrown, text), 'JSON text', 'JSON takes no comments, no trailing commas and no NaN.');
   }
-  const twice = repeatedNames(text);
-  return twice.length > 0 ? err(twice) : ok(value);
+  const faults = nameFaults(text);
+  return faults.length > 0 ? err(faults) : ok(value);
 }
 
 const refuse = (code: string, saw: string, expected: string, hint?: string): Result<never, Problem[]> =>
@@ -40,13 +41,14 @@ interface Level {
 }
 
 /** One pass over text that is known to be valid JSON, without recursion. */
-function repeatedNames(text: string): Problem[] {
+function nameFaults(text: string): Problem[] {
   const problems: Problem[] = [];
   const levels: Level[] = [];
   const token = /"(?:[^"\\]|\\.)*"|[{}[\],]/gs;
   for (let found = token.exec(text); found; found = token.exec(text)) {
     const here = levels.at(-1);
     const part = found[0];
+    if (levels.length > maxDepth) return [{ code: 'claims/too-deep', where: '', saw: `more than ${maxDepth} levels of brackets`, expected: 'a claim sheet' }];
     if (part === '{' || part === '[') levels.push({ names: part === '{' ? new Set() : null, path: here ? here.path + (here.names ? '' : `/${here.index}`) : '', index: 0 });
     else if (part === '}' || part === ']') levels.pop();
     else if (part === ',') {
@@ -61,6 +63,7 @@ function note(here: Level, name: string, levels: readonly Level[], problems: Pro
   const base = above ? above.path + (above.names ? '' : `/${above.index}`) : '';
   const where = `${above?.names ? above.path : base}/${name.replaceAll('~', '~0').replaceAll('/', '~1')}`;
   if (here.names?.has(name)) problems.push({ code: 'claims/name-twice', where, saw: `the name ${describe(name)} twice in one object`, expected: 'each name once', hint: 'Remove one of the two; a reader would see only the last.' });
+  if (name === '__proto__') problems.push({ code: 'claims/unknown-name', where, saw: `the name ${describe(name)}`, expected: 'only names of the format' });
   here.names?.add(name);
   here.path = where;
 }
