@@ -33,6 +33,7 @@ async function start() {
   await ensureDependencies();
   // A database of one's own in the environment means: this is no demonstration.
   const ready = process.env.DATABASE_URL ? await startForTeam(supervisor) : await startDemo(supervisor, { dev });
+  supervisor.ready = true;
   fs.writeFileSync(READY_FILE, ready);
   say(`ready after ${((Date.now() - begun) / 1000).toFixed(1)} s\n\n${ready}\n`);
 }

@@ -8,22 +8,23 @@ import { startScript, startSigner, startWeb, startWorker, waitUntilReady } from 
 export async function startDemo(supervisor, { dev }) {
   const { postgres, ports, env: base } = await prepareDemo();
   supervisor.addLast(() => postgres.stop());
+  supervisor.watch('PostgreSQL', postgres);
   const env = { ...base, NODE_ENV: dev ? 'development' : 'production' };
   await startFakes(supervisor, ports, env);
   // The build and the seed need nothing from each other, and there are two cores.
   await allOrFirstError([prepareDatabase(env), ...(dev ? [] : [ensureBuild()])]);
   await ports.web.release();
-  const web = supervisor.add(startWeb(env, { port: ports.web.port, dev }));
-  supervisor.add(startWorker(env));
-  supervisor.add(startSigner(env));
+  const web = supervisor.keep(() => startWeb(env, { port: ports.web.port, dev }));
+  supervisor.keep(() => startWorker(env));
+  supervisor.keep(() => startSigner(env));
   await waitUntilReady(`http://127.0.0.1:${ports.web.port}/readyz`, web);
   return demoSummary(env, postgres.port);
 }
 
 async function startFakes(supervisor, ports, env) {
   for (const held of [ports.store, ports.smtp, ports.reader]) await held.release();
-  const store = supervisor.add(startScript('store', 'lib/tools/object-store.ts', env));
-  const mail = supervisor.add(startScript('mail', 'lib/tools/mail-reader.ts', env));
+  const store = supervisor.keep(() => startScript('store', 'lib/tools/object-store.ts', env));
+  const mail = supervisor.keep(() => startScript('mail', 'lib/tools/mail-reader.ts', env));
   await waitUntilReady(`${env.MAIL_READER_URL}/`, mail);
   await waitUntilReady(`${env.S3_ENDPOINT}/${env.S3_BUCKET}`, store);
 }
@@ -37,9 +38,9 @@ export async function startForTeam(supervisor) {
   else say('OWNER_DATABASE_URL is not set: the database is taken as migrated');
   await ensureBuild();
   const port = Number(env.PORT ?? 3000);
-  const web = supervisor.add(startWeb(env, { host: env.HOST, port }));
-  if (env.WORKER_DATABASE_URL) supervisor.add(startWorker(env));
-  if (env.SIGNER_DATABASE_URL && env.SIGNING_KEY_FILE) supervisor.add(startSigner(env));
+  const web = supervisor.keep(() => startWeb(env, { host: env.HOST, port }));
+  if (env.WORKER_DATABASE_URL) supervisor.keep(() => startWorker(env));
+  if (env.SIGNER_DATABASE_URL && env.SIGNING_KEY_FILE) supervisor.keep(() => startSigner(env));
   await waitUntilReady(`http://${env.HOST ?? '127.0.0.1'}:${port}/readyz`, web);
   return `  ${env.APP_URL}`;
 }

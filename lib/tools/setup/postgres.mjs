@@ -21,10 +21,17 @@ export async function startPostgres({ folder, password, firstPort = 54320, fast 
   const control = (...args) => runAs(owner, `${programs.bin}/pg_ctl`, ['-D', data, ...args]);
   const adopted = control('status').status === 0;
   if (!adopted) await startOnFreePort(control, data, firstPort, fast);
-  const pidFile = fs.readFileSync(path.join(data, 'postmaster.pid'), 'utf8').split('\n');
-  const port = Number(pidFile[3]);
+  const port = Number(pidFileOf(data)[3]);
   if (adopted) say(`PostgreSQL already runs on port ${port}`);
-  return { port, adopted, data, adminUrl: roleUrl(ADMIN, password, port, 'postgres'), stop: () => stop(control, data) };
+  return {
+    port,
+    adopted,
+    data,
+    adminUrl: roleUrl(ADMIN, password, port, 'postgres'),
+    isUp: () => isUp(data),
+    bringUp: () => startOn(control, data, port, fast),
+    stop: () => stop(control, data),
+  };
 }
 
 export const roleUrl = (role, password, port, database) =>
@@ -99,17 +106,30 @@ const THROW_AWAY = ['fsync=off', 'synchronous_commit=off', 'full_page_writes=off
 
 /** A port can be taken between the look and the bind, so five ports are tried. */
 async function startOnFreePort(control, data, firstPort, fast) {
-  const log = path.join(data, 'server.log');
   for (let attempt = 0, next = firstPort; attempt < 5; attempt++) {
     const port = await freePort(next);
-    const settings = [...ALWAYS, ...(fast ? THROW_AWAY : [])].map((s) => `-c ${s}`).join(' ');
-    // -l: a daemon that inherited our pipes would keep us waiting for ever.
-    if (control('-w', '-t', '60', '-l', log, '-o', `-p ${port} ${settings}`, 'start').status === 0) return;
+    if (startOn(control, data, port, fast)) return;
     next = port + 1;
   }
-  throw new SetupError(`PostgreSQL did not start. The end of ${log}:\n${tail(log)}`);
+  throw new SetupError(`PostgreSQL did not start. The end of ${logOf(data)}:\n${tail(logOf(data))}`);
 }
 
+function startOn(control, data, port, fast) {
+  const settings = [...ALWAYS, ...(fast ? THROW_AWAY : [])].map((setting) => `-c ${setting}`).join(' ');
+  // -l: a daemon that inherited our pipes would keep us waiting for ever.
+  return control('-w', '-t', '60', '-l', logOf(data), '-o', `-p ${port} ${settings}`, 'start').status === 0;
+}
+
+function isUp(data) {
+  try {
+    return process.kill(Number(pidFileOf(data)[0]), 0);
+  } catch (error) {
+    return error.code === 'EPERM';
+  }
+}
+
+const logOf = (data) => path.join(data, 'server.log');
+const pidFileOf = (data) => fs.readFileSync(path.join(data, 'postmaster.pid'), 'utf8').split('\n');
 const tail = (file) => (fs.existsSync(file) ? fs.readFileSync(file, 'utf8').slice(-2000) : '(empty)');
 
 function stop(control, data) {
