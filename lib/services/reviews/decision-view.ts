@@ -17,7 +17,10 @@ export interface DecisionView {
   /** One sentence for the record's public page, where the editor wrote one. */
   readonly publicSentence: string;
   /** `enter` only: is the record signed, waiting for the signer, or was it refused (with the reason, for the editor). */
-  readonly signing: { readonly state: 'not-needed' | 'waiting' | 'signed' } | { readonly state: 'refused'; readonly reason: string };
+  readonly signing:
+    | { readonly state: 'not-needed' | 'waiting' }
+    | { readonly state: 'signed'; readonly recordId: string }
+    | { readonly state: 'refused'; readonly reason: string };
 }
 
 /** What the decision page starts from. */

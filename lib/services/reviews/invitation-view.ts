@@ -1,3 +1,4 @@
+import type { SubmissionState } from '@/lib/policy/submission-state';
 import type { ConflictFlag } from '@/lib/reviews/conflicts';
 
 export type InvitationState = 'asked' | 'accepted' | 'declined' | 'lapsed' | 'relieved';
@@ -30,6 +31,8 @@ export interface OwnInvitationView {
   readonly invitedAt: string;
   readonly answerBy: string;
   readonly state: InvitationState;
+  readonly submissionState: SubmissionState;
+  readonly stateWords: string;
 }
 
 /** A person the editor might ask, with what speaks against it and how much they carry now. */
