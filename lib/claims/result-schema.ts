@@ -1,0 +1,50 @@
+import { z } from 'zod';
+
+/** `counterfoil-result/1` as a schema: what scripts of authors may rely on. Fields may be added, so unknown ones are let through. */
+const nullable = z.number().nullable();
+const verdict = z.enum(['agrees', 'differs', 'unsettled', 'not-computable', 'routes-disagree']);
+
+const point = z.looseObject({
+  at: z.record(z.string(), z.number()),
+  claimed: z.union([z.number(), z.object({ above: z.number() }), z.object({ below: z.number() })]),
+  printed: z.string(),
+  tolerance: nullable,
+  value: nullable,
+  expandedUncertainty: nullable,
+  routes: z.object({ A: nullable, B: nullable }),
+  apart: nullable,
+  verdict,
+  components: z.record(z.string(), nullable).optional(),
+});
+
+const finding = z.looseObject({
+  code: z.string(),
+  level: z.enum(['stops-lodging', 'needs-answer', 'worth-a-look', 'note']),
+  text: z.string(),
+  where: z.string(),
+  fix: z.string().optional(),
+});
+
+const claim = z.looseObject({
+  id: z.string(),
+  quantity: z.string(),
+  unit: z.string(),
+  verdict,
+  remarks: z.array(z.string()),
+  coverage: z.object({ state: z.enum(['covered', 'understated', 'unknown']), missing: z.array(z.string()).optional(), factor: z.number().optional() }),
+  points: z.array(point).min(1),
+  budget: z.array(z.looseObject({ component: z.string(), id: z.string(), group: z.enum(['computation', 'coverage']), u: nullable, note: z.string() })),
+  assumed: z.array(z.string()),
+  settings: z.array(z.looseObject({ name: z.string(), value: z.unknown(), standing: z.enum(['declared', 'assumed', 'swept']), unit: z.string().optional() })),
+  routeB: z.array(z.int()),
+  findings: z.array(finding),
+  candidates: z.array(z.unknown()),
+});
+
+export const resultSchema = z.looseObject({
+  format: z.literal('counterfoil-result/1'),
+  engine: z.string(),
+  title: z.string(),
+  files: z.array(z.object({ name: z.string(), bytes: z.int(), sha256: z.string() })),
+  claims: z.array(claim).min(1),
+});
