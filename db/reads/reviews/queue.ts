@@ -76,7 +76,7 @@ export const listLodgedRuns = (reader: Reader, ids: readonly string[]) =>
 /** The newest attempt first. */
 export const listEntering = (reader: Reader, ids: readonly string[]) =>
   reader
-    .select({ submissionId: decisions.submissionId, recordId: records.id, refusal: signingRefusals.reason })
+    .select({ submissionId: decisions.submissionId, revision: decisions.revision, recordId: records.id, refusal: signingRefusals.reason })
     .from(decisions)
     .leftJoin(records, eq(records.decisionId, decisions.id))
     .leftJoin(signingRefusals, eq(signingRefusals.decisionId, decisions.id))

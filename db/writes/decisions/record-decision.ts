@@ -18,7 +18,7 @@ export interface NewDecision {
   readonly publicSentence: string;
 }
 
-type MayDecide = SubmissionGrant<'review.set-aside'> | SubmissionGrant<'review.send-back'> | SubmissionGrant<'review.enter'>;
+type MayDecide = SubmissionGrant<'review.set-aside' | 'review.send-back' | 'review.enter'>;
 
 /** The channel on which the signer listens; a notice without content, since it reads everything for itself. */
 export const DECIDED_CHANNEL = 'counterfoil_decided';

@@ -36,7 +36,7 @@ async function loadRows(reader: Reader, editorId: string, now: string): Promise<
   const entering = await listEntering(reader, ids);
   return submissions.flatMap((s) => {
     const run = runs.find((r) => r.submissionId === s.id);
-    const facts = factsOf(s, editorId, referees.filter((r) => r.submissionId === s.id), run, entering.find((e) => e.submissionId === s.id));
+    const facts = factsOf(s, editorId, referees.filter((r) => r.submissionId === s.id), run, entering.find((e) => e.submissionId === s.id && e.revision === run?.revision));
     const place = placeInQueue(facts, now);
     if (!place) return [];
     const own = authors.filter((a) => a.submissionId === s.id);
