@@ -3,7 +3,7 @@
  * completed and restricted (rule 2.3), the dominant one is found, and the taper is fixed as a
  * few times (rule 2.4). Both routes take these definitions; neither takes the other's samples.
  */
-import type { Mode, Waveform } from '../contract/waveform';
+import type { Mode, Waveform } from '@/lib/engine/contract/waveform';
 
 export type NegativeM = 'mirror' | 'given' | 'none';
 

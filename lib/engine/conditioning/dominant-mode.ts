@@ -1,4 +1,4 @@
-import type { Mode } from '../contract/waveform';
+import type { Mode } from '@/lib/engine/contract/waveform';
 
 /** Largest sampled modulus of a complex series. */
 export function peakModulus(re: Float64Array, im: Float64Array | null): number {

@@ -1,5 +1,5 @@
-import type { ModeIndex } from '../contract/settings';
-import type { Mode, Waveform } from '../contract/waveform';
+import type { ModeIndex } from '@/lib/engine/contract/settings';
+import type { Mode, Waveform } from '@/lib/engine/contract/waveform';
 
 export interface ModeChoice {
   readonly modes: 'all' | readonly ModeIndex[];

@@ -1,5 +1,5 @@
-import type { TaperWindow } from '../contract/route';
-import type { Waveform } from '../contract/waveform';
+import type { TaperWindow } from '@/lib/engine/contract/route';
+import type { Waveform } from '@/lib/engine/contract/waveform';
 import { dominantMode, peakModulus } from './dominant-mode';
 import { cyclesFrom, type CycleClock } from './cycle-clock';
 

@@ -45,7 +45,10 @@ export interface MatchOutcome {
   readonly mismatch: number;
   /** b must be moved by this, later > 0. */
   readonly timeShiftS: number;
+  /** Advance of b's wave phase; with `complex` and a mode set the change of b's azimuth. */
   readonly phaseShiftRad: number;
+  /** ψ of the rotation e^{2iψ} of b's h₊ − ih×, when the polarisation is maximised over. */
+  readonly polarisationRad?: number;
   /** b's inclination and the factor on b's mass, when maximised over. */
   readonly inclinationRad?: number;
   readonly massFactor?: number;
@@ -71,6 +74,8 @@ export interface MatchRequest {
 export interface DetectorRoute {
   readonly name: 'A' | 'B';
   readonly gram: (side: Side, band: Band) => ResponseGram;
+  /** Many lines of sight at once, for averages over the sphere; where absent, `gram` is asked for each. */
+  readonly grams?: (side: Side, band: Band, sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[]) => readonly ResponseGram[];
   /** Σ over modes of 2∫_{−∞}^{∞}|h̃_ℓm|²/S(|f|) df, band-limited in |f|, in strain units (rule 2.8); modes only. */
   readonly modePower: (side: Side, band: Band) => number;
   readonly overlap: (a: Side, b: Side, band: Band, response: Response) => number;

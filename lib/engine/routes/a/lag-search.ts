@@ -1,0 +1,185 @@
+import { powerOfTwoFrom, transformOfSize } from '@/lib/engine/fourier/transform';
+import type { CrossSpectrum } from './cross-spectrum';
+
+/** What is maximised over the shift: the modulus (a phase or rotation is free) or the real part (it is not). */
+export type Objective = 'modulus' | 'real';
+
+export interface LagPeak {
+  /** Shift in cycles per bin. */
+  readonly x: number;
+  readonly re: number;
+  readonly im: number;
+  readonly value: number;
+}
+
+interface Derivatives {
+  re: number;
+  im: number;
+  re1: number;
+  im1: number;
+  re2: number;
+  im2: number;
+}
+
+const TURN = 2 * Math.PI;
+/** Sines are taken anew every so many bins; between them a recurrence is exact to 1e-15. */
+const BLOCK = 256;
+
+/** Adds Σ q_j e^{±2πi(first+j)x} and its first two derivatives in x (in units of 2π) to the sums. */
+function accumulate(sums: Derivatives, re: Float64Array, im: Float64Array, first: number, x: number, sign: 1 | -1): void {
+  const n = re.length;
+  const stepRe = Math.cos(TURN * x);
+  const stepIm = sign * Math.sin(TURN * x);
+  let s0r = 0;
+  let s0i = 0;
+  let s1r = 0;
+  let s1i = 0;
+  let s2r = 0;
+  let s2i = 0;
+  for (let from = 0; from < n; from += BLOCK) {
+    const to = Math.min(n, from + BLOCK);
+    const start = (first + from) * x;
+    const turns = start - Math.round(start);
+    let er = Math.cos(TURN * turns);
+    let ei = sign * Math.sin(TURN * turns);
+    for (let j = from; j < to; j++) {
+      const vr = re[j]! * er - im[j]! * ei;
+      const vi = re[j]! * ei + im[j]! * er;
+      const k = first + j;
+      s0r += vr;
+      s0i += vi;
+      s1r += k * vr;
+      s1i += k * vi;
+      s2r += k * k * vr;
+      s2i += k * k * vi;
+      const next = er * stepRe - ei * stepIm;
+      ei = er * stepIm + ei * stepRe;
+      er = next;
+    }
+  }
+  sums.re += s0r;
+  sums.im += s0i;
+  // d/dx of e^{±iω} is ±ik e^{±iω}.
+  sums.re1 -= sign * s1i;
+  sums.im1 += sign * s1r;
+  sums.re2 -= s2r;
+  sums.im2 -= s2i;
+}
+
+/** c(x) and its derivatives with respect to 2πx. */
+export function evaluateAt(c: CrossSpectrum, x: number): Derivatives {
+  const sums = { re: 0, im: 0, re1: 0, im1: 0, re2: 0, im2: 0 };
+  accumulate(sums, c.plusRe, c.plusIm, c.first, x, 1);
+  if (c.minusRe !== null && c.minusIm !== null) accumulate(sums, c.minusRe, c.minusIm, c.first, x, -1);
+  return sums;
+}
+
+const objectiveValue = (d: Derivatives, objective: Objective): number => (objective === 'real' ? d.re : d.re * d.re + d.im * d.im);
+
+/** Newton steps on |c|² or Re c; a step that would leave the cell or does not climb is halved. */
+function climb(c: CrossSpectrum, start: number, cell: number, objective: Objective): LagPeak {
+  let x = start;
+  let d = evaluateAt(c, x);
+  for (let round = 0; round < 40; round++) {
+    const slope = objective === 'real' ? d.re1 : 2 * (d.re * d.re1 + d.im * d.im1);
+    const bend = objective === 'real' ? d.re2 : 2 * (d.re1 * d.re1 + d.im1 * d.im1 + d.re * d.re2 + d.im * d.im2);
+    let step = bend < 0 ? -slope / bend / TURN : Math.sign(slope) * cell * 0.25;
+    step = Math.max(-cell, Math.min(cell, step));
+    // Newton converges quadratically: from a thousandth of a cell one more step leaves 1e-6 of it, and the value within 1e-12.
+    if (Math.abs(step) < 1e-3 * cell) return peakAt(evaluateAt(c, x + step), x + step, objective);
+    let next = evaluateAt(c, x + step);
+    for (let halving = 0; halving < 30 && objectiveValue(next, objective) < objectiveValue(d, objective) && Math.abs(step) > 1e-9 * cell; halving++) {
+      step /= 2;
+      next = evaluateAt(c, x + step);
+    }
+    if (objectiveValue(next, objective) >= objectiveValue(d, objective)) [x, d] = [x + step, next];
+  }
+  return peakAt(d, x, objective);
+}
+
+const peakAt = (d: Derivatives, x: number, objective: Objective): LagPeak => ({
+  x,
+  re: d.re,
+  im: d.im,
+  value: objective === 'real' ? d.re : Math.hypot(d.re, d.im),
+});
+
+interface Core {
+  readonly from: number;
+  readonly to: number;
+}
+
+/** The bins that hold all but a hundredth of Σ|c_j|: only they are needed to find the cell of the maximum. */
+function coreOf(c: CrossSpectrum): Core {
+  const size = (j: number): number =>
+    Math.abs(c.plusRe[j]!) + Math.abs(c.plusIm[j]!) + (c.minusRe === null ? 0 : Math.abs(c.minusRe[j]!) + Math.abs(c.minusIm![j]!));
+  let total = 0;
+  for (let j = 0; j < c.n; j++) total += size(j);
+  let to = c.n;
+  for (let left = 0; to > 1 && (left += size(to - 1)) < 0.005 * total; ) to--;
+  let from = 0;
+  for (let left = 0; from < to - 1 && (left += size(from)) < 0.005 * total; ) from++;
+  return { from, to };
+}
+
+/** |c| or Re c on a grid of shifts i/N, at least twice as fine as the core's bandwidth. */
+function coarseGrid(c: CrossSpectrum, objective: Objective): Float64Array {
+  const { from, to } = coreOf(c);
+  const oneSided = objective === 'modulus' && c.minusRe === null;
+  // With one side and a free phase the carrier drops out, and the band may be moved to bin 0.
+  const moved = oneSided ? c.first + from : 0;
+  const size = powerOfTwoFrom(oneSided ? 2 * (to - from) : 4 * (c.first + to));
+  const data = new Float64Array(2 * size);
+  for (let j = from; j < to; j++) {
+    const at = 2 * (c.first + j - moved);
+    data[at]! += c.plusRe[j]!;
+    data[at + 1]! += c.plusIm[j]!;
+    if (c.minusRe === null) continue;
+    const mirror = 2 * (size - (c.first + j));
+    data[mirror]! += c.minusRe[j]!;
+    data[mirror + 1]! += c.minusIm![j]!;
+  }
+  const out = new Float64Array(2 * size);
+  transformOfSize(size).inverse(out, data);
+  const values = new Float64Array(size);
+  for (let i = 0; i < size; i++) values[i] = objective === 'real' ? out[2 * i]! : out[2 * i]! * out[2 * i]! + out[2 * i + 1]! * out[2 * i + 1]!;
+  return values;
+}
+
+const MOST_CANDIDATES = 24;
+
+/** Grid maxima that could hide the highest peak between grid points: with twofold oversampling none below 1/√2 of the top can. */
+function candidatesOf(values: Float64Array, objective: Objective): number[] {
+  const n = values.length;
+  let top = -Infinity;
+  for (let i = 0; i < n; i++) if (values[i]! > top) top = values[i]!;
+  const least = top <= 0 ? top : (objective === 'real' ? 0.66 : 0.44) * top;
+  const found: number[] = [];
+  for (let i = 0; i < n; i++) {
+    const v = values[i]!;
+    if (v >= least && v >= values[(i + n - 1) % n]! && v > values[(i + 1) % n]!) found.push(i);
+  }
+  if (found.length === 0) found.push(values.indexOf(top));
+  return found.sort((p, q) => values[q]! - values[p]! || p - q).slice(0, MOST_CANDIDATES);
+}
+
+/**
+ * The shift at which a cross spectrum is largest, over all shifts that its bins resolve.
+ * Shape:  one peak; x in (−½, ½] cycles per bin, later > 0 for b.
+ * Units:  value in the cross spectrum's own (before the factor 4 df).
+ * Error:  the maximum itself to 1e-12 of its value (Newton); the cell is found by an inverse transform at least twice oversampled.
+ * Fails:  never; an empty spectrum gives 0.
+ * Source: engine design; without the refinement a match is low by up to 8e-5.
+ */
+export function findLag(c: CrossSpectrum, objective: Objective): LagPeak {
+  if (c.n === 0) return { x: 0, re: 0, im: 0, value: 0 };
+  const grid = coarseGrid(c, objective);
+  const n = grid.length;
+  let best: LagPeak | null = null;
+  for (const i of candidatesOf(grid, objective)) {
+    const start = i > n / 2 ? (i - n) / n : i / n;
+    const peak = climb(c, start, 1 / n, objective);
+    if (best === null || peak.value > best.value) best = peak;
+  }
+  return best ?? { x: 0, re: 0, im: 0, value: 0 };
+}

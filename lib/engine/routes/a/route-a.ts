@@ -1,0 +1,126 @@
+import type { Band, DetectorRoute, MatchOutcome, MatchRequest, ResponseGram, Side } from '@/lib/engine/contract/route';
+import type { Response } from '@/lib/engine/contract/settings';
+import { residualSum, shiftS, xOfShift, type Pair } from './alignment';
+import { channelsOf, power, realResponse } from './cross-spectrum';
+import { JointSearch, searchedIn, type Placement } from './joint-search';
+import { lineSpectrum, modeBank } from './mode-bank';
+import { houseNumerics, type Numerics } from './numerics';
+import { prepare, type Prepared } from './prepare';
+import type { Spectrum } from './spectrum';
+import { SpectrumStore } from './spectrum-store';
+import type { BinWeights } from './bin-weights';
+
+const strainScale = (side: Side): number => side.strainPerUnit * side.secondsPerUnit;
+
+function gramOf(s: Spectrum, weights: BinWeights, scale: number): ResponseGram {
+  const plus = realResponse(s, 'plus');
+  const cross = realResponse(s, 'cross');
+  const factor = 4 * weights.dfHz * scale * scale;
+  let mixed = 0;
+  for (let j = 0; j < weights.values.length; j++) {
+    const k = weights.first + j;
+    mixed += weights.values[j]! * (plus.re[k]! * cross.re[k]! + plus.im[k]! * cross.im[k]!);
+  }
+  return { plusPlus: factor * power(plus, weights), crossCross: factor * power(cross, weights), plusCross: factor * mixed };
+}
+
+/** ‖·‖² without 4 df (real) or 2 df (both polarisations). */
+function normOf(s: Spectrum, response: Response, weights: BinWeights): number {
+  const { plus, minus } = channelsOf(s, response);
+  return power(plus, weights) + (minus === null ? 0 : power(minus, weights));
+}
+
+/** Turn of the cross spectrum, as the phase and polarisation that the contract names. */
+function turnsOf(request: MatchRequest, placement: Placement, turnRad: number): Pick<MatchOutcome, 'phaseShiftRad' | 'polarisationRad'> {
+  const polarisation = request.maximise.includes('polarisation');
+  if (request.response !== 'complex') return { phaseShiftRad: turnRad };
+  const modes = request.b.waveform.content.kind === 'modes';
+  if (modes) return { phaseShiftRad: placement.azimuthShiftRad, ...(polarisation ? { polarisationRad: turnRad / 2 } : {}) };
+  // h ∝ e^{−iφ}: rotating h₊ − ih× by +α delays the wave's phase by α.
+  return request.maximise.includes('phase') ? { phaseShiftRad: -turnRad } : { phaseShiftRad: 0, polarisationRad: turnRad / 2 };
+}
+
+/** The inverse of `turnsOf`. */
+function turnAt(request: MatchRequest, at: MatchOutcome): number {
+  if (request.response !== 'complex') return at.phaseShiftRad;
+  if (request.b.waveform.content.kind === 'modes') return 2 * (at.polarisationRad ?? 0);
+  return request.maximise.includes('phase') ? -at.phaseShiftRad : 2 * (at.polarisationRad ?? 0);
+}
+
+function outcomeOf(request: MatchRequest, store: SpectrumStore, numerics: Numerics): MatchOutcome {
+  const searched = searchedIn(request);
+  const { pair, alignment, placement, onBound } = new JointSearch(request, searched, store, numerics).run();
+  const norms = [normOf(pair.a, request.response, pair.weights), normOf(pair.b, request.response, pair.weights)] as const;
+  const scales = [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] as const;
+  const mismatch = norms[0] > 0 && norms[1] > 0 ? residualSum(pair, request.response, scales, alignment.x, alignment.turnRad) / 2 : Number.NaN;
+  return {
+    // Below ½ the residual is the sharper of the two and keeps the match at most 1.
+    match: mismatch < 0.5 ? 1 - mismatch : alignment.value,
+    mismatch,
+    timeShiftS: request.maximise.includes('time') ? shiftS(pair, alignment.x) : 0,
+    ...turnsOf(request, placement, alignment.turnRad),
+    ...(searched.inclination ? { inclinationRad: placement.inclinationRad } : {}),
+    ...(searched.mass ? { massFactor: placement.massFactor, onBound } : {}),
+  };
+}
+
+function residualPower(request: MatchRequest, at: MatchOutcome, store: SpectrumStore, numerics: Numerics): number {
+  const search = new JointSearch(request, searchedIn(request), store, numerics);
+  const massFactor = at.massFactor ?? 1;
+  const modes = request.b.waveform.content.kind === 'modes' && request.response === 'complex';
+  const placement = { massFactor, inclinationRad: at.inclinationRad ?? request.b.inclinationRad, azimuthShiftRad: modes ? at.phaseShiftRad : 0 };
+  const pair: Pair = search.pairAt(placement);
+  const b = at.massFactor === undefined ? request.b : request.rescale(request.b, massFactor);
+  const x = xOfShift(pair, at.timeShiftS);
+  const sum = residualSum(pair, request.response, [strainScale(request.a), strainScale(b)], x, turnAt(request, at));
+  return (request.response === 'complex' ? 2 : 4) * pair.weights.dfHz * sum;
+}
+
+function modePower(side: Side, band: Band, store: SpectrumStore, numerics: Numerics): number {
+  const { content } = side.waveform;
+  if (content.kind !== 'modes') return Number.NaN;
+  const scale = strainScale(side);
+  return content.modes.reduce((sum, _, index) => {
+    const { spectra, weights } = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics, [{ kind: 'mode', index }]);
+    return sum + 2 * weights.dfHz * scale * scale * normOf(spectra[0]!, 'complex', weights);
+  }, 0);
+}
+
+/** Many lines of sight at one mass: the modes are transformed once and summed bin by bin. */
+function grams(side: Side, band: Band, sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[], store: SpectrumStore, numerics: Numerics): ResponseGram[] {
+  const prepared: Prepared = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics);
+  const bank = modeBank(side, prepared.dF[0]!, store, numerics);
+  const { weights } = prepared;
+  const last = weights.first + weights.values.length - 1;
+  return sights.map(({ inclinationRad, azimuthRad }) => {
+    const s = bank.length === 0 ? prepared.spectra[0]! : lineSpectrum(bank, inclinationRad, azimuthRad, weights.first, last);
+    return gramOf(s, weights, strainScale(side));
+  });
+}
+
+/**
+ * Route A with its knobs and its memory.
+ * Shape:  see DetectorRoute; variants that share a store share what their knobs leave alone.
+ * Units:  see DetectorRoute.
+ * Error:  as the knobs say; 1e-12 of the value on smooth, well sampled data.
+ * Fails:  never; no power in the band gives norms of 0 and matches of NaN.
+ * Source: engine design: one transform per waveform on its own axis, masses stretch the frequencies.
+ */
+export function createRouteA(numerics: Numerics = houseNumerics, store: SpectrumStore = new SpectrumStore()): DetectorRoute {
+  const overlap = (a: Side, b: Side, band: Band, response: Response): number =>
+    outcomeOf({ a, b, band, response, maximise: [], templateMassRange: [1, 1], rescale: (side) => side }, store, numerics).match;
+  return {
+    name: 'A',
+    gram: (side, band) => {
+      const { spectra, weights } = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics);
+      return gramOf(spectra[0]!, weights, strainScale(side));
+    },
+    grams: (side, band, sights) => grams(side, band, sights, store, numerics),
+    modePower: (side, band) => modePower(side, band, store, numerics),
+    overlap,
+    match: (request) => outcomeOf(request, store, numerics),
+    residualPower: (request, at) => residualPower(request, at, store, numerics),
+  };
+}
+
+export const routeA: DetectorRoute = createRouteA();

@@ -1,0 +1,75 @@
+import type { TaperWindow } from '@/lib/engine/contract/route';
+import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
+import type { Waveform } from '@/lib/engine/contract/waveform';
+import { frequencySource, type FrequencySource } from './frequency-source';
+import { noiseWeigher, type NoiseWeigher } from './noise-weigher';
+import type { Spectrum } from './spectrum';
+import { timeSource, type TimeSource } from './time-source';
+
+/** Spectra of one waveform that are kept: a mass-free search needs few, a search over the template's mass many once. */
+const MOST_SPECTRA = 40;
+
+interface Shelf {
+  time?: TimeSource;
+  frequency?: FrequencySource;
+  /** Halvings of the step that this waveform was found to need. */
+  halvings: number;
+  readonly spectra: Map<string, Spectrum>;
+}
+
+/**
+ * What route A keeps between the points of one measurement, keyed by the objects themselves so that
+ * it is forgotten with them. Variants of the route that differ in one knob share what that knob leaves alone.
+ */
+export class SpectrumStore {
+  private readonly shelves = new WeakMap<Waveform, Shelf>();
+  private readonly weighers = new WeakMap<NoiseCurve, Map<number, NoiseWeigher>>();
+
+  private shelf(waveform: Waveform): Shelf {
+    const known = this.shelves.get(waveform);
+    if (known) return known;
+    const made: Shelf = { halvings: 0, spectra: new Map() };
+    this.shelves.set(waveform, made);
+    return made;
+  }
+
+  time(waveform: Waveform): TimeSource {
+    const shelf = this.shelf(waveform);
+    return (shelf.time ??= timeSource(waveform));
+  }
+
+  frequency(waveform: Waveform): FrequencySource {
+    const shelf = this.shelf(waveform);
+    return (shelf.frequency ??= frequencySource(waveform));
+  }
+
+  halvings(waveform: Waveform): number {
+    return this.shelf(waveform).halvings;
+  }
+
+  halve(waveform: Waveform): void {
+    this.shelf(waveform).halvings++;
+  }
+
+  spectrum(waveform: Waveform, key: string, make: () => Spectrum): Spectrum {
+    const { spectra } = this.shelf(waveform);
+    const known = spectra.get(key);
+    if (known) return known;
+    const made = make();
+    if (spectra.size >= MOST_SPECTRA) spectra.delete(spectra.keys().next().value!);
+    spectra.set(key, made);
+    return made;
+  }
+
+  weigher(curve: NoiseCurve, halvings: number): NoiseWeigher {
+    const byStep = this.weighers.get(curve) ?? new Map<number, NoiseWeigher>();
+    this.weighers.set(curve, byStep);
+    const known = byStep.get(halvings);
+    if (known) return known;
+    const made = noiseWeigher(curve, halvings);
+    byStep.set(halvings, made);
+    return made;
+  }
+}
+
+export const taperKey = ({ start, end }: TaperWindow): string => `${start?.from},${start?.to},${end?.from},${end?.to}`;

@@ -1,0 +1,144 @@
+import type { Waveform } from '@/lib/engine/contract/waveform';
+import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
+import { interpolatePair, type UniformGrid } from '@/lib/engine/series/local-interpolation';
+import { interpolateThroughPolar, isFinelySampled, polarOf, type ComplexSeries, type PolarSeries } from '@/lib/engine/series/polar';
+
+/** A uniform grid on a record: every stride-th sample as it stands, or interpolated (stride null). */
+export interface SampleGrid extends UniformGrid {
+  readonly tEnd: number;
+  readonly stride: number | null;
+}
+
+export interface Samples {
+  readonly re: Float64Array;
+  /** Null when the strain is real. */
+  readonly im: Float64Array | null;
+}
+
+/** What route A knows of one time-domain record, computed once. */
+export interface TimeSource {
+  readonly waveform: Waveform;
+  readonly axis: Float64Array;
+  readonly span: number;
+  /** 1/(2 × step), the median step where steps differ, in cycles per unit. */
+  readonly nyquist: number;
+  /** Largest |dh/dt| over 2π times the peak: about the frequency where the signal is strongest. */
+  readonly fastest: number;
+  readonly lineOfSight: (grid: SampleGrid, order: number, inclinationRad: number, azimuthRad: number) => Samples;
+  readonly mode: (grid: SampleGrid, order: number, index: number) => Samples;
+}
+
+/** The axis of an evenly sampled record is taken from its ends: printed times are rounded (rule 2.1). */
+function exactAxis(waveform: Waveform): Float64Array {
+  const { axis, uniformStep } = waveform;
+  if (uniformStep === null) return axis;
+  return axis.map((_, k) => axis[0]! + k * uniformStep);
+}
+
+/** Highest frequency the samples carry: 1/(2 × step), with the median step of an uneven record. */
+export function nyquistOf(waveform: Waveform): number {
+  const { axis, uniformStep } = waveform;
+  if (waveform.domain === 'frequency') return axis[axis.length - 1]!;
+  if (uniformStep !== null) return 0.5 / uniformStep;
+  const steps = new Float64Array(axis.length - 1);
+  for (let i = 0; i < steps.length; i++) steps[i] = axis[i + 1]! - axis[i]!;
+  steps.sort();
+  const middle = steps.length >> 1;
+  const median = steps.length % 2 === 1 ? steps[middle]! : (steps[middle - 1]! + steps[middle]!) / 2;
+  return 0.5 / median;
+}
+
+function fastestOf(axis: Float64Array, re: Float64Array, im: Float64Array | null): number {
+  let top = 0;
+  let slope = 0;
+  for (let i = 1; i < axis.length; i++) {
+    const dt = axis[i]! - axis[i - 1]!;
+    const x = re[i]! - re[i - 1]!;
+    const y = im === null ? 0 : im[i]! - im[i - 1]!;
+    const rate = (x * x + y * y) / (dt * dt);
+    if (rate > slope) slope = rate;
+    const size = re[i]! * re[i]! + (im === null ? 0 : im[i]! * im[i]!);
+    if (size > top) top = size;
+  }
+  return top > 0 ? Math.sqrt(slope / top) / (2 * Math.PI) : 0;
+}
+
+interface Part extends ComplexSeries {
+  readonly l: number;
+  readonly m: number;
+}
+
+/** Columns along a line of sight are one "mode" without a harmonic. */
+function partsOf(waveform: Waveform): { parts: Part[]; real: boolean; angular: boolean } {
+  const { content } = waveform;
+  if (content.kind === 'modes') return { parts: content.modes.map(({ l, m, re, im }) => ({ l, m, re, im })), real: false, angular: true };
+  const { plus, cross } = content;
+  const real = cross === null || cross.every((x) => x === 0);
+  const im = real ? plus : cross.map((x) => -x);
+  return { parts: [{ l: 0, m: 0, re: plus, im }], real, angular: false };
+}
+
+function every(series: Float64Array, stride: number, n: number): Float64Array {
+  const out = new Float64Array(n);
+  for (let k = 0; k < n; k++) out[k] = series[k * stride]!;
+  return out;
+}
+
+function addTimes(target: ComplexSeries, part: ComplexSeries, y: { re: number; im: number }): void {
+  const { re, im } = target;
+  for (let k = 0; k < re.length; k++) {
+    const [a, b] = [part.re[k]!, part.im[k]!];
+    re[k]! += y.re * a - y.im * b;
+    im[k]! += y.re * b + y.im * a;
+  }
+}
+
+/**
+ * Prepares a record for resampling.
+ * Shape:  a time-domain waveform with the modes in use.
+ * Units:  the waveform's own.
+ * Error:  interpolation of the order asked for; none for samples used as they stand.
+ * Fails:  never.
+ * Source: engine design: amplitude and phase below 20 samples a cycle, re and im above.
+ */
+export function timeSource(waveform: Waveform): TimeSource {
+  const axis = exactAxis(waveform);
+  const { parts, real, angular } = partsOf(waveform);
+  const polar = new Map<number, PolarSeries | null>();
+  const polarForm = (index: number): PolarSeries | null => {
+    const known = polar.get(index);
+    if (known !== undefined) return known;
+    const made = isFinelySampled(parts[index]!) ? null : polarOf(parts[index]!);
+    polar.set(index, made);
+    return made;
+  };
+  const partOn = (grid: SampleGrid, order: number, index: number): ComplexSeries => {
+    const part = parts[index]!;
+    if (grid.stride !== null) return { re: every(part.re, grid.stride, grid.n), im: every(part.im, grid.stride, grid.n) };
+    const form = real ? null : polarForm(index);
+    if (form !== null) return interpolateThroughPolar(axis, part, form, grid, order);
+    const [re, im] = interpolatePair({ axis, first: part.re, second: part.im }, grid, order);
+    return { re, im };
+  };
+  const lineOfSight = (grid: SampleGrid, order: number, inclinationRad: number, azimuthRad: number): Samples => {
+    if (!angular) {
+      const { re, im } = partOn(grid, order, 0);
+      return { re, im: real ? null : im };
+    }
+    const sum = { re: new Float64Array(grid.n), im: new Float64Array(grid.n) };
+    parts.forEach((part, index) => {
+      const y = spinWeightedHarmonic(part.l, part.m, inclinationRad, azimuthRad);
+      if (y.re !== 0 || y.im !== 0) addTimes(sum, partOn(grid, order, index), y);
+    });
+    return sum;
+  };
+  return {
+    waveform,
+    axis,
+    span: axis[axis.length - 1]! - axis[0]!,
+    nyquist: nyquistOf(waveform),
+    fastest: Math.max(0, ...parts.map((part) => fastestOf(axis, part.re, real ? null : part.im))),
+    lineOfSight,
+    mode: partOn,
+  };
+}
