@@ -19,12 +19,6 @@ const isBand = (series: FigureSeries) => series.role === 'band-low' || series.ro
 /** What must not share an axis: two units on one plot would invite a wrong reading. */
 const groupKey = (series: FigureSeries) => (series.role === 'residual' ? 'residual' : `${series.axis} ${series.scale} ${series.unit}`);
 
-function scaleOf(series: readonly FigureSeries[]): 'linear' | 'log' {
-  const wanted = series.every((s) => s.scale === 'log');
-  const positive = series.every((s) => s.values.every((v) => v === null || v > 0));
-  return wanted && positive ? 'log' : 'linear';
-}
-
 /** Stacked panels instead of two vertical axes: main traces first, then residual or the other unit. */
 export function panelsOf(figure: Figure): readonly Panel[] {
   const keys = [...new Set(figure.series.map(groupKey))];
@@ -37,7 +31,7 @@ export function panelsOf(figure: Figure): readonly Panel[] {
       title: lines.map((s) => s.label).join(', '),
       heightPx: key === 'residual' ? 104 : i === 0 ? 210 : 150,
       series: [...lines, ...series.filter(isBand)],
-      scale: scaleOf(series),
+      scale: series.every((x) => x.scale === 'log') ? 'log' : 'linear',
       unit: series[0]?.unit ?? '',
       showsX: i === ordered.length - 1,
     };

@@ -41,10 +41,12 @@ function PanelMount({ figure, panel, index, onIndex, still }: PanelMountProps) {
       loading = true;
       const { default: UPlot } = await import('uplot');
       if (gone) return;
-      const hooks = { setCursor: [(u: uPlot) => { if (u.cursor.event && typeof u.cursor.idx === 'number') report.current(u.cursor.idx); }] };
-      plot.current = new UPlot({ ...spec.options, width, hooks }, spec.data, element);
+      const restore = (u: uPlot) => showAt(u, spec.data, at.current);
+      const follow = (u: uPlot) => {
+        if (typeof u.cursor.idx === 'number') report.current(u.cursor.idx);
+      };
+      plot.current = new UPlot({ ...spec.options, width, hooks: { ready: [restore], setSize: [restore], setCursor: [follow] } }, spec.data, element);
       setLive(true);
-      showAt(plot.current, spec.data, at.current);
     };
     const observer = new ResizeObserver(([entry]) => {
       const width = Math.floor(entry?.contentRect.width ?? 0);
@@ -66,7 +68,7 @@ function PanelMount({ figure, panel, index, onIndex, still }: PanelMountProps) {
   return (
     <div className="relative min-w-0" style={{ height: panel.heightPx }}>
       <div ref={box} className="absolute inset-0" />
-      {!live && <div className="absolute inset-0 ml-14">{still}</div>}
+      {!live && <div className="absolute inset-0 ml-16">{still}</div>}
     </div>
   );
 }
@@ -115,7 +117,7 @@ export function Plot({ claimId, figure, stills }: { readonly claimId: string; re
     moveTo(next);
   };
   return (
-    <figure className="grid min-w-0 gap-1.5 text-small not-first:mt-6">
+    <figure className="grid min-w-0 content-start gap-1.5 text-small">
       <figcaption className="flex flex-wrap items-baseline gap-x-4 gap-y-0.5 font-semibold"><span>{figure.title}</span><Key figure={figure} /></figcaption>
       <div
         role="slider"

@@ -23,7 +23,7 @@ export function readoutOf(figure: Figure, index: number): string {
     .filter((s) => s.role !== 'band-low' && s.role !== 'band-high' && (s.values[index] ?? null) !== null)
     .map((s) => {
       const bar = s.role === 'recomputed' && typeof low === 'number' && typeof high === 'number' ? `, band ${valueText(low, '')} to ${valueText(high, s.unit)}` : '';
-      return `${s.label} ${valueText(s.values[index], s.unit)}${bar}`;
+      return `${s.label} = ${valueText(s.values[index], s.unit)}${bar}`;
     });
   return `at ${placeText(figure, index)}: ${parts.length > 0 ? parts.join('; ') : 'no value'}`;
 }

@@ -1,4 +1,5 @@
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
+import { axisScale, type AxisScale } from './axis-scale';
 import { drawnAsPoints, drawnDashed, type Panel } from './panels';
 import { colourOf } from './plot-options';
 
@@ -7,49 +8,56 @@ const most = 400;
 interface Span {
   readonly low: number;
   readonly high: number;
-  readonly log: boolean;
+  readonly scale: AxisScale;
 }
 
-function spanOf(values: readonly (number | null)[], log: boolean, margin: number): Span {
-  const known = values.flatMap((v) => (v !== null && Number.isFinite(v) && (!log || v > 0) ? [log ? Math.log10(v) : v] : []));
+function spanOf(values: readonly (number | null)[], wanted: 'linear' | 'log', margin: number): Span {
+  const scale = axisScale(wanted, values);
+  const known = values.flatMap((v) => (v === null ? [] : [scale.toPlot(v)])).filter((v): v is number => v !== null && Number.isFinite(v));
   const low = known.reduce((a, b) => Math.min(a, b), Infinity);
   const high = known.reduce((a, b) => Math.max(a, b), -Infinity);
   const room = (high - low || Math.abs(high) || 1) * margin;
-  return { low: low - room, high: high + room, log };
+  return { low: low - room, high: high + room, scale };
 }
 
-const place = (value: number, span: Span): number => (1000 * ((span.log ? Math.log10(value) : value) - span.low)) / (span.high - span.low || 1);
+/** Thousandths of the frame, or null where a value has no place on the axis. */
+function place(value: number | null | undefined, span: Span): number | null {
+  const at = value === null || value === undefined ? null : span.scale.toPlot(value);
+  return at === null || !Number.isFinite(at) ? null : (1000 * (at - span.low)) / (span.high - span.low || 1);
+}
 
 function pathOf(figure: Figure, values: readonly (number | null)[], x: Span, y: Span): string {
   const every = Math.max(1, Math.ceil(values.length / most));
   let pen = 'M';
   let path = '';
   for (let i = 0; i < values.length; i += every) {
-    const value = values[i] ?? null;
-    const at = figure.x.values[i];
-    if (value === null || at === undefined || (y.log && value <= 0) || (x.log && at <= 0)) {
+    const across = place(figure.x.values[i], x);
+    const up = place(values[i], y);
+    if (across === null || up === null) {
       pen = 'M';
       continue;
     }
-    path += `${pen}${place(at, x).toFixed(1)} ${(1000 - place(value, y)).toFixed(1)}`;
+    path += `${pen}${across.toFixed(1)} ${(1000 - up).toFixed(1)}`;
     pen = 'L';
   }
   return path;
 }
 
+function dotsOf(figure: Figure, series: FigureSeries, x: Span, y: Span): string {
+  const dots = series.values.map((v, i) => [place(figure.x.values[i], x), place(v, y)] as const);
+  return dots.map(([across, up]) => (across === null || up === null ? '' : `M${across.toFixed(1)} ${(1000 - up).toFixed(1)}h.01`)).join('');
+}
+
 function Trace({ figure, series, x, y }: { readonly figure: Figure; readonly series: FigureSeries; readonly x: Span; readonly y: Span }) {
   const stroke = `var(--${colourOf(series)})`;
-  if (drawnAsPoints(figure, series)) {
-    const dots = series.values.flatMap((v, i) => (v === null ? [] : [`M${place(figure.x.values[i] ?? 0, x).toFixed(1)} ${(1000 - place(v, y)).toFixed(1)}h.01`]));
-    return <path d={dots.join('')} stroke={stroke} strokeWidth="9" strokeLinecap="round" vectorEffect="non-scaling-stroke" />;
-  }
+  if (drawnAsPoints(figure, series)) return <path d={dotsOf(figure, series, x, y)} stroke={stroke} strokeWidth="9" strokeLinecap="round" vectorEffect="non-scaling-stroke" />;
   return <path d={pathOf(figure, series.values, x, y)} fill="none" stroke={stroke} strokeWidth="1.6" strokeDasharray={drawnDashed(figure, series) ? '5 3' : undefined} vectorEffect="non-scaling-stroke" />;
 }
 
 /** The same panel without script: paths in a stretched SVG, the scales told in words below. */
 export function StillPlot({ figure, panel }: { readonly figure: Figure; readonly panel: Panel }) {
-  const x = spanOf(figure.x.values, figure.x.scale === 'log', 0);
-  const y = spanOf(panel.series.flatMap((s) => s.values), panel.scale === 'log', 0.05);
+  const x = spanOf(figure.x.values, figure.x.scale, 0);
+  const y = spanOf(panel.series.flatMap((s) => s.values), panel.scale, 0.05);
   return (
     <svg viewBox="0 0 1000 1000" preserveAspectRatio="none" aria-hidden="true" className="h-full w-full bg-sheet">
       {panel.series.filter((s) => s.role !== 'band-low' && s.role !== 'band-high').map((s) => <Trace key={s.label + s.role} figure={figure} series={s} x={x} y={y} />)}

@@ -23,7 +23,7 @@ interface OpenedClaimProps {
 
 export function Part({ title, children }: { readonly title: ReactNode; readonly children: ReactNode }) {
   return (
-    <div className="min-w-0 not-first:mt-6">
+    <div className="min-w-0">
       <h3 className="mb-1.5 text-[16px]/[24px]">{title}</h3>
       {children}
     </div>
@@ -39,8 +39,8 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
   return (
     <>
       <OpenedRow id={ids[0] ?? claim.id}>
-        <td className="c" role="cell" colSpan={4}>
-          {slots.action && <div className="mb-6">{slots.action(claim.id)}</div>}
+        <td className="c" role="cell" colSpan={4}><div className="grid gap-6">
+          {slots.action && <div>{slots.action(claim.id)}</div>}
           <Part title="Settings"><SettingTable claimId={claim.id} settings={claim.settings} /></Part>
           {heading.quote && <Part title="As the text says"><p className="max-w-[52ch] border-l-2 border-control pl-3 font-serif italic">“{heading.quote}”</p></Part>}
           {heading.formula && (
@@ -50,17 +50,17 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
             </Part>
           )}
           {files.length > 0 && <Part title="Files"><FileList files={files} /></Part>}
-        </td>
+        </div></td>
         <PerfCell />
-        <td className="r" role="cell" colSpan={5}>
+        <td className="r" role="cell" colSpan={5}><div className="grid gap-6">
           <ClaimPlots claimId={claim.id} figures={beside} empty={below.length === 0} />
           {heading.points.length > claim.points.length || claim.points.length > 8 ? <Part title={`All ${claim.points.length} points`}><PointTable claim={claim} heading={heading} /></Part> : null}
-        </td>
+        </div></td>
       </OpenedRow>
       <OpenedRow id={ids[1] ?? `${claim.id}-more`} across>
         <td role="cell" colSpan={10}>
-          <div className="grid grid-cols-1 gap-x-10 gap-y-6 mid:grid-cols-2 [&>*]:mt-0">
-            {below.length > 0 && <div className="min-w-0"><ClaimPlots claimId={claim.id} figures={below} /></div>}
+          <div className="grid grid-cols-1 gap-x-10 gap-y-8 mid:grid-cols-2">
+            {below.length > 0 && <div className="grid min-w-0 content-start gap-6"><ClaimPlots claimId={claim.id} figures={below} /></div>}
             {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /></Part>}
             <Part title="Two routes"><RouteTable claim={claim} /></Part>
             <Part title="Findings">

@@ -32,18 +32,31 @@ const toNumber = (printed: string): number => Number(printed.replace(/\(.*$/, ''
 /** Beyond these decimals a plain number is harder to read than its power of ten. */
 const mostColumnDecimals = 8;
 
-function readingStyle(point: PointOnScreen, unitPower: number | null) {
-  const decimals = decimalsForReading(point.claimed.tolerance, printedDecimals(point.claimed.printed), unitPower);
+/** Tolerance and distance in the quantity's own unit, also where they are declared as fractions. */
+function inUnit(point: PointOnScreen, ln: boolean): { readonly tolerance: number | null; readonly apart: number | null } {
+  const { tolerance } = point.claimed;
+  const value = point.result?.value ?? toNumber(point.claimed.printed);
+  const apart = point.result?.apart ?? null;
+  return ln ? { tolerance: tolerance === null ? null : tolerance * Math.abs(value), apart: apart === null ? null : apart * Math.abs(value) } : { tolerance, apart };
+}
+
+interface ReadingStyle {
+  readonly decimals: number;
+  readonly plain: boolean;
+}
+
+function readingStyle(point: PointOnScreen, ln: boolean): ReadingStyle {
+  const { tolerance, apart } = inUnit(point, ln);
+  const decimals = decimalsForReading(tolerance, printedDecimals(point.claimed.printed), point.result?.expandedUncertainty ?? null, apart);
   const size = Math.abs(point.result?.value ?? toNumber(point.claimed.printed));
-  const plain = size === 0 || (size >= 1e-3 && decimals <= mostColumnDecimals);
-  return { decimals, plain };
+  return { decimals, plain: size === 0 || (size >= 1e-3 && decimals <= mostColumnDecimals) };
 }
 
 /** Cells of one point after the claim's name: where, claimed, tolerance | value, U, apart, verdict. */
 export function PointCells({ heading, claim, point, sweep, first, waiting, slots }: PointCellsProps) {
   const { claimed, result } = point;
   const u = result?.expandedUncertainty ?? null;
-  const style = readingStyle(point, heading.scale === 'ln' ? null : u);
+  const style = readingStyle(point, heading.scale === 'ln');
   const At = sweep ? 'th' : 'td';
   return (
     <>
@@ -90,7 +103,7 @@ function Tolerance({ claimed, ln, plain, unit }: { readonly claimed: ClaimedPoin
   return <NumberCell value={claimed.tolerance} plain={plain && claimed.tolerance >= 1e-7} unit={unit} />;
 }
 
-function Recomputed({ point, unit, style, waiting }: { readonly point: PointOnScreen; readonly unit: string; readonly style: { decimals: number; plain: boolean }; readonly waiting: string | null }) {
+function Recomputed({ point, unit, style, waiting }: { readonly point: PointOnScreen; readonly unit: string; readonly style: ReadingStyle; readonly waiting: string | null }) {
   if (!point.result) return waiting === 'Not run yet' ? <NoNumber /> : <><Skeleton width="7ch" /><span className="sr-only">not computed yet</span></>;
   return <NumberCell value={point.result.value} decimals={style.decimals} plain={style.plain} unit={unit} unknown="not computable" />;
 }
@@ -100,7 +113,7 @@ function Uncertainty({ u, unit }: { readonly u: number | null; readonly unit: st
   return <NumberCell value={roundUpUncertainty(u)} significant={2} unit={unit} />;
 }
 
-function Apart({ heading, point, style }: { readonly heading: ClaimHeading; readonly point: PointOnScreen; readonly style: { decimals: number; plain: boolean } }) {
+function Apart({ heading, point, style }: { readonly heading: ClaimHeading; readonly point: PointOnScreen; readonly style: ReadingStyle }) {
   const result = point.result;
   if (!result || result.apart === null) return <NoNumber />;
   const ln = heading.scale === 'ln';

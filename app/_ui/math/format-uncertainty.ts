@@ -11,11 +11,15 @@ export function roundUpUncertainty(u: number): number {
   return Number(`${digits}e${power}`);
 }
 
-/** Decimals at which a recomputed value is read against its claim. */
-export function decimalsForReading(tolerance: number | null, printedDecimals: number, u: number | null): number {
-  const needed = tolerance !== null && tolerance > 0 ? decimalsFor(tolerance, 2) : 0;
-  const wanted = Math.max(needed, printedDecimals + 1);
-  return u !== null && u > 0 ? Math.max(Math.min(wanted, decimalsFor(u, 2)), 0) : wanted;
+/**
+ * Decimals at which a recomputed value is read against its claim: two digits of the tolerance, one
+ * more than the author prints, enough that a difference is not shown as none; never finer than U.
+ */
+export function decimalsForReading(tolerance: number | null, printedDecimals: number, u: number | null, apart: number | null = null): number {
+  const fromTolerance = tolerance !== null && tolerance > 0 ? decimalsFor(tolerance, 2) : 0;
+  const fromApart = apart !== null && apart !== 0 && Number.isFinite(apart) ? decimalsFor(Math.abs(apart), 1) : 0;
+  const wanted = Math.max(fromTolerance, fromApart, printedDecimals + 1);
+  return u !== null && u > 0 ? Math.min(wanted, decimalsFor(u, 2)) : Math.min(wanted, Math.max(fromTolerance, printedDecimals + 1));
 }
 
 /** Digits after the point of a number as printed by its author: `0.9984(3)` → 4. */

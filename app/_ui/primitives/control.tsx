@@ -2,13 +2,14 @@ import type { InputHTMLAttributes, ReactNode, Ref, SelectHTMLAttributes, Textare
 import { classes } from './classes';
 import { Field } from './field';
 
-const box = 'w-full min-w-0 rounded border border-control bg-sheet px-2.5 py-[7px] text-input text-ink aria-invalid:border-differs disabled:border-dashed disabled:text-ink-2 read-only:bg-transparent';
+const box = 'w-full min-w-0 rounded border border-control bg-sheet px-2.5 py-[7px] text-input text-ink aria-invalid:border-differs disabled:border-dashed disabled:text-ink-2';
+const readOnly = 'read-only:bg-transparent';
 
 type InputProps = InputHTMLAttributes<HTMLInputElement> & { readonly ref?: Ref<HTMLInputElement>; readonly dense?: boolean };
-export const Input = ({ className, dense, ...rest }: InputProps) => <input {...rest} className={classes(box, dense ? 'min-h-8 py-[5px]' : 'min-h-9', className)} />;
+export const Input = ({ className, dense, ...rest }: InputProps) => <input {...rest} className={classes(box, readOnly, dense ? 'min-h-8 py-[5px]' : 'min-h-9', className)} />;
 
 type TextareaProps = TextareaHTMLAttributes<HTMLTextAreaElement> & { readonly ref?: Ref<HTMLTextAreaElement> };
-export const Textarea = ({ className, ...rest }: TextareaProps) => <textarea {...rest} className={classes(box, 'min-h-[84px] resize-y leading-[22px]', className)} />;
+export const Textarea = ({ className, ...rest }: TextareaProps) => <textarea {...rest} className={classes(box, readOnly, 'min-h-[84px] resize-y leading-[22px]', className)} />;
 
 type SelectProps = SelectHTMLAttributes<HTMLSelectElement> & { readonly ref?: Ref<HTMLSelectElement>; readonly dense?: boolean };
 export const Select = ({ className, dense, ...rest }: SelectProps) => <select {...rest} className={classes(box, 'select-arrow', dense ? 'min-h-8 py-[5px]' : 'min-h-9', className)} />;

@@ -27,7 +27,7 @@ export function Field({ label, hint, error, labelHidden, className, id, children
   const errorId = error ? `${base}-error` : null;
   const described = [errorId, hintId].filter(Boolean).join(' ');
   return (
-    <div className={classes('grid min-w-0 grid-cols-[minmax(0,1fr)] gap-1 text-ui', className)}>
+    <div className={classes('grid min-w-0 content-start grid-cols-[minmax(0,1fr)] gap-1 text-ui', className)}>
       <label htmlFor={base} className={labelHidden ? 'sr-only' : 'text-small font-semibold'}>{label}</label>
       {children({ id: base, ...(described ? { 'aria-describedby': described } : {}), ...(error ? { 'aria-invalid': true as const } : {}) })}
       {error && <FieldError id={errorId ?? undefined}>{error}</FieldError>}

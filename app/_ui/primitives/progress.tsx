@@ -26,7 +26,7 @@ export function ProgressList({ steps, label = 'Progress' }: { readonly steps: re
   return (
     <ul aria-label={label} className="grid gap-1.5 text-ui">
       {steps.map((step) => (
-        <li key={step.label} className="grid min-h-8 grid-cols-[minmax(96px,150px)_1fr_56px] items-center gap-3">
+        <li key={step.label} className="grid min-h-8 grid-cols-[minmax(96px,150px)_1fr_76px] items-center gap-3">
           <span>{step.label}</span>
           <ProgressBar {...step} />
           <span className="text-right text-ink-2">{step.fraction === null ? 'under way' : perCent(step.fraction)}</span>

@@ -9,7 +9,7 @@ export function coverageText(coverage: Coverage): { readonly word: string; reado
     return { word: `Understated${times}`, because: null };
   }
   const missing = coverage.missing ?? [];
-  return { word: 'Unknown', because: missing.length === 0 ? null : `without ${missing.join(', ')}` };
+  return { word: 'Unknown', because: missing.length === 0 ? null : `missing: ${missing.join(', ')}` };
 }
 
 export function CoverageStatement({ coverage }: { readonly coverage: Coverage | null }) {

@@ -1,0 +1,38 @@
+import type { Metadata } from 'next';
+import type { ReactNode } from 'react';
+import { loadFor } from '@/lib/http/page-guard';
+import { getOwnAccount } from '@/lib/services/accounts/get-own-account';
+import { Facts } from '@/app/_ui/primitives/facts';
+import { LinkButton } from '@/app/_ui/primitives/link-button';
+import { SignOutButton } from './sign-out-button';
+
+export const metadata: Metadata = { title: 'Account' };
+
+const roleWords = { member: 'member', editor: 'editor', administrator: 'administrator' } as const;
+
+const Group = ({ id, title, hint, children }: { readonly id: string; readonly title: string; readonly hint: string; readonly children: ReactNode }) => (
+  <section aria-labelledby={id} className="grid gap-x-10 gap-y-3 stack:grid-cols-[220px_minmax(0,1fr)]">
+    <div><h2 id={id}>{title}</h2><p className="mt-1 text-small text-ink-2">{hint}</p></div>
+    <div className="min-w-0">{children}</div>
+  </section>
+);
+
+export default async function Account() {
+  const account = await loadFor('/account', getOwnAccount);
+  return (
+    <div className="wrap pt-10">
+      <div className="mx-auto grid max-w-[980px] gap-10">
+        <h1>Account</h1>
+        <Group id="you" title="You" hint="Shown on records you author.">
+          <Facts facts={[['Name', account.name], ['Affiliation', account.affiliation ?? 'not given'], ['E-mail', account.email], ['Account', roleWords[account.role]]]} />
+        </Group>
+        <Group id="password" title="Password" hint="Setting a new one signs you out everywhere else.">
+          <LinkButton href="/forgotten-password">Set a new password</LinkButton>
+        </Group>
+        <Group id="session" title="This session" hint="Ends by itself after 12 hours without use, and after 7 days in any case.">
+          <SignOutButton />
+        </Group>
+      </div>
+    </div>
+  );
+}

@@ -1,0 +1,34 @@
+/** What the account forms ask of the sign-in service, and its answers as sentences. */
+export type AuthAnswer = { readonly ok: true } | { readonly ok: false; readonly sentence: string };
+
+export type AuthPath = 'sign-in/email' | 'sign-up/email' | 'request-password-reset' | 'reset-password' | 'sign-out';
+
+const sentences: Readonly<Record<string, string>> = {
+  INVALID_EMAIL_OR_PASSWORD: 'This e-mail and password do not belong together. Try again, or set a new password.',
+  EMAIL_NOT_VERIFIED: 'This address is not confirmed yet. A new letter with the link is on its way to it; open the link, then sign in.',
+  INVALID_TOKEN: 'This link has been used or is older than an hour. Ask for a new one.',
+  PASSWORD_TOO_SHORT: 'The password has fewer than 15 characters. Four or five unrelated words do well.',
+  PASSWORD_TOO_LONG: 'The password has more than 256 characters. Choose a shorter one.',
+  INVALID_EMAIL: 'This is not an e-mail address. It should look like name@place.example.',
+};
+
+function sentenceOf(status: number, body: unknown, retryAfter: string | null): string {
+  if (status === 429) return `Too many tries. Wait ${retryAfter ? `${retryAfter} seconds` : 'a minute'} and try again.`;
+  const { code, message, detail } = (typeof body === 'object' && body !== null ? body : {}) as { code?: string; message?: string; detail?: string };
+  return (code && sentences[code]) || detail || message || 'The sign-in service gave no reason. Try again in a minute.';
+}
+
+export async function askAuth(path: AuthPath, body: Readonly<Record<string, unknown>>): Promise<AuthAnswer> {
+  try {
+    const response = await fetch(`/api/auth/${path}`, { method: 'POST', headers: { 'content-type': 'application/json' }, body: JSON.stringify(body) });
+    if (response.ok) return { ok: true };
+    const said: unknown = await response.json().catch(() => null);
+    return { ok: false, sentence: sentenceOf(response.status, said, response.headers.get('x-retry-after') ?? response.headers.get('retry-after')) };
+  } catch {
+    return { ok: false, sentence: 'No connection. Nothing was sent; try again when it is back.' };
+  }
+}
+
+/** Only a path of this site may follow a sign-in, or a link could send people elsewhere. */
+export const safeNext = (next: string | string[] | undefined): string =>
+  typeof next === 'string' && /^\/(?![/\\])[^\\\u0000-\u001f]*$/.test(next) ? next : '/';

@@ -1,0 +1,58 @@
+'use server';
+import { z } from 'zod';
+import { defineAction } from '@/lib/http/define-action';
+import { removeFile as remove } from '@/lib/services/files/remove-file';
+import { checkDraft } from '@/lib/services/submissions/check-draft';
+import { createDraft as create } from '@/lib/services/submissions/create-draft';
+import { loadSheet as load } from '@/lib/services/submissions/load-sheet';
+import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
+import { reviseSubmission } from '@/lib/services/submissions/revise-submission';
+import { draftChange, updateDraft } from '@/lib/services/submissions/update-draft';
+import { withdrawSubmission } from '@/lib/services/submissions/withdraw-submission';
+import { requestVariation as vary, variationInput } from '@/lib/services/variations/request-variation';
+
+const id = z.uuid({ version: 'v4' });
+const onlyId = z.strictObject({ id });
+
+export const createDraft = defineAction({
+  door: 'action compose.createDraft',
+  input: z.strictObject({ title: z.string().max(300).optional() }),
+  rate: { points: 60, perS: 3600 },
+  handle: ({ actor, input }) => create(actor, input),
+});
+
+export const saveDraft = defineAction({
+  door: 'action compose.saveDraft',
+  input: z.strictObject({ id, change: draftChange }),
+  handle: ({ actor, input }) => updateDraft(actor, input.id, input.change),
+});
+
+export const loadSheet = defineAction({
+  door: 'action compose.loadSheet',
+  input: z.strictObject({ id, version: z.int().min(1), claimJson: z.string().max(900_000) }),
+  handle: ({ actor, input: { id: submissionId, ...sheet } }) => load(actor, submissionId, sheet),
+});
+
+export const removeFile = defineAction({
+  door: 'action compose.removeFile',
+  input: z.strictObject({ id, name: z.string().min(1).max(300) }),
+  handle: ({ actor, input }) => remove(actor, input.id, { name: input.name }),
+});
+
+export const check = defineAction({ door: 'action compose.check', input: onlyId, handle: ({ actor, input }) => checkDraft(actor, input.id) });
+
+export const lodge = defineAction({ door: 'action compose.lodge', input: onlyId, handle: ({ actor, input }) => lodgeSubmission(actor, input.id) });
+
+export const revise = defineAction({ door: 'action compose.revise', input: onlyId, handle: ({ actor, input }) => reviseSubmission(actor, input.id) });
+
+export const withdraw = defineAction({
+  door: 'action compose.withdraw',
+  input: z.strictObject({ id, reason: z.string().max(2000) }),
+  handle: ({ actor, input }) => withdrawSubmission(actor, input.id, { reason: input.reason }),
+});
+
+export const requestVariation = defineAction({
+  door: 'action compose.requestVariation',
+  input: z.strictObject({ id, variation: variationInput }),
+  handle: ({ actor, input }) => vary(actor, input.id, input.variation),
+});
