@@ -5,9 +5,9 @@ import { findKeptAnswer } from '@/db/reads/requests/kept-answer';
 import { allowedOrigins } from '@/lib/auth/allowed-origins';
 import { currentActor } from '@/lib/auth/current-actor';
 import { webEnv } from '@/lib/env';
+import type { Result } from '@/lib/kernel/result';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
 import type { Door } from '@/lib/policy/doors';
-import type { Outcome } from '@/lib/services/app-error';
 import { underKey } from '@/lib/services/once';
 import { judgeOrigin } from './origin';
 import { BAD_CREDENTIAL, FOREIGN_ORIGIN, problemResponse, reportDefect, type DoorError } from './problem-response';
@@ -30,7 +30,7 @@ interface RouteSpec<P, Q, B, T> {
   /** A strict object; `stream` leaves the body to the handler. */
   readonly body?: z.ZodType<B> | 'stream';
   readonly rate?: Rate;
-  readonly handle: (call: RouteCall<P, Q, B>) => Promise<Outcome<T>>;
+  readonly handle: (call: RouteCall<P, Q, B>) => Promise<Result<T, DoorError>>;
   /** A Response for what is not JSON; else the value is the body. */
   readonly respond?: (value: T) => Response;
   readonly status?: number;
@@ -109,7 +109,7 @@ async function replay(userId: string, key: string, requestDigest: string): Promi
   return json(kept.body, kept.status);
 }
 
-function answer<P, Q, B, T>(spec: RouteSpec<P, Q, B, T>, outcome: Outcome<T>): Response {
+function answer<P, Q, B, T>(spec: RouteSpec<P, Q, B, T>, outcome: Result<T, DoorError>): Response {
   if (!outcome.ok) return problemResponse(outcome.error);
   return spec.respond ? spec.respond(outcome.value) : json(outcome.value ?? null, spec.status ?? 200);
 }

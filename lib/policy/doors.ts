@@ -30,6 +30,20 @@ export const DOORS = {
   'POST /api/v1/submissions/{id}/revise': ['submission.revise'],
   'GET /api/v1/submissions/{id}/variations': ['submission.vary'],
   'POST /api/v1/submissions/{id}/variations': ['submission.vary'],
+  'action account.signIn': ['own-session'],
+  'action account.signUp': ['own-session'],
+  'action account.signOut': ['own-session'],
+  'action account.requestPasswordReset': ['own-session'],
+  'action account.choosePassword': ['own-session'],
+  'action compose.createDraft': ['submission.create'],
+  'action compose.saveDraft': ['submission.edit'],
+  'action compose.loadSheet': ['submission.edit'],
+  'action compose.removeFile': ['submission.edit'],
+  'action compose.check': ['submission.check'],
+  'action compose.lodge': ['submission.lodge'],
+  'action compose.revise': ['submission.revise'],
+  'action compose.withdraw': ['submission.withdraw'],
+  'action compose.requestVariation': ['submission.vary'],
 } as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;
 
 /** Reviews and pages add theirs in their own files; the test reads all tables. */

@@ -8,7 +8,7 @@ import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { mayGenerally } from '@/lib/policy/grant';
 import { actGenerally, actOnSubmission } from '@/lib/services/act';
-import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
+import { AppFailure, fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { currentRevision } from '@/lib/services/files/add-file';
 import { discardStaged, MAX_FILES, stageFile, type Incoming } from '@/lib/services/files/stage-file';
 import { LODGED_ALREADY } from './update-draft';
@@ -50,9 +50,10 @@ export function loadSheet(actor: Actor, submissionId: string, input: { readonly 
 }
 
 export interface Folder {
-  /** `claim.json`, once it has come by; files may come before or after it. */
+  /** Text of `claim.json`, once it has come by; files may come before or after it. */
   readonly claimJson: () => string | null;
-  readonly files: AsyncIterable<Incoming>;
+  /** Hands over one file after the other; an error of `take` ends the walk. */
+  readonly eachFile: (take: (file: Incoming) => Promise<void>) => Promise<void>;
 }
 
 /** A whole claim-sheet folder at once: a draft with sheet and files, or nothing. */
@@ -60,25 +61,24 @@ export async function createFromFolder(actor: Actor, folder: Folder): Promise<Ou
   const allowed = mayGenerally('submission.create', actor);
   if (!allowed.ok) return allowed;
   const staged: UploadedFile[] = [];
-  const made = await stageAll(folder.files, staged).then(
-    (all) => (all.ok ? recordFolder(actor, folder.claimJson(), staged) : all),
-    async (cause: unknown) => {
-      await discardStaged(staged);
-      throw cause;
-    },
-  );
-  if (!made.ok) await discardStaged(staged);
+  let made: Outcome<{ readonly id: string }> | null = null;
+  try {
+    await folder.eachFile((file) => stageInto(staged, file));
+    made = await recordFolder(actor, folder.claimJson(), staged);
+  } catch (cause) {
+    if (!(cause instanceof AppFailure)) throw cause;
+    made = { ok: false, error: cause.error };
+  } finally {
+    if (!made?.ok) await discardStaged(staged);
+  }
   return made;
 }
 
-async function stageAll(files: AsyncIterable<Incoming>, staged: UploadedFile[]): Promise<Outcome<null>> {
-  for await (const file of files) {
-    if (staged.length >= MAX_FILES) return fail('limit', `A submission holds at most ${MAX_FILES} files.`);
-    const one = await stageFile(file);
-    if (!one.ok) return one;
-    staged.push(one.value);
-  }
-  return ok(null);
+async function stageInto(staged: UploadedFile[], file: Incoming): Promise<void> {
+  if (staged.length >= MAX_FILES) throw new AppFailure({ code: 'limit', sentence: `A submission holds at most ${MAX_FILES} files.` });
+  const one = await stageFile(file);
+  if (!one.ok) throw new AppFailure(one.error);
+  staged.push(one.value);
 }
 
 async function recordFolder(actor: Actor, claimJson: string | null, files: readonly UploadedFile[]): Promise<Outcome<{ readonly id: string }>> {
