@@ -134,6 +134,18 @@ export function derivativeOf(spline: Spline): Spline {
   return { basis, coefficients: c };
 }
 
+/** Spline of the integral from the first site: one degree higher, its end knots repeated once more. */
+export function antiderivativeOf(spline: Spline): Spline {
+  const { degree, knots, n } = spline.basis;
+  const c = new Float64Array(n + 1);
+  for (let i = 0; i < n; i++) c[i + 1] = c[i]! + (spline.coefficients[i]! * (knots[i + degree + 1]! - knots[i]!)) / (degree + 1);
+  const wider = new Float64Array(knots.length + 2);
+  wider.set(knots, 1);
+  wider[0] = knots[0]!;
+  wider[wider.length - 1] = knots[knots.length - 1]!;
+  return { basis: { ...spline.basis, degree: degree + 1, knots: wider, n: n + 1 }, coefficients: c };
+}
+
 /**
  * Values of splines that share a basis at ascending points inside the axis.
  * Shape:  one row of `points.length` a spline.

@@ -1,0 +1,76 @@
+import type { UsedSetting } from '../contract/measurement';
+import type { DeclaredSettings, ModeIndex, SettingName } from '../contract/settings';
+import type { Waveform } from '../contract/waveform';
+import type { BinaryParameters } from '../synthesis/binary';
+import type { BeforeRule } from './energy-before';
+import { defaultFloor } from './integration-floor';
+import type { RadiationRecord } from './radiation-record';
+
+/** Everything a point of a radiated-energy claim rests on, defaults filled in. */
+export interface EnergySettings {
+  readonly modes: 'all' | readonly ModeIndex[];
+  readonly lMax: number | null;
+  readonly startM: number;
+  /** ω₀ in rad/M for |m| = 2; null when nothing is integrated. */
+  readonly floor: number | null;
+  readonly rule: BeforeRule;
+  readonly normaliseBy: 'M' | 'adm' | 'remnant';
+  /** Null when the mass ratio is not known. */
+  readonly binary: BinaryParameters | null;
+}
+
+export function binaryOfClaim(declared: DeclaredSettings, waveform: Waveform): BinaryParameters | null {
+  const massRatio = declared.massRatio ?? waveform.binary.massRatio;
+  if (massRatio === undefined) return null;
+  return { massRatio, chi1z: declared.chi1z ?? waveform.binary.chi1z ?? 0, chi2z: declared.chi2z ?? waveform.binary.chi2z ?? 0 };
+}
+
+/** Settings of one point; the record is needed where a default is read from the data. */
+export function energySettings(declared: DeclaredSettings, waveform: Waveform, record: RadiationRecord): EnergySettings {
+  const startM = declared.startM ?? waveform.junkEndM ?? record.axis[0]!;
+  return {
+    modes: declared.modes ?? 'all',
+    lMax: declared.lMax ?? null,
+    startM,
+    floor: record.variable === 'psi4' ? (declared.integrationFloor ?? defaultFloor(record, startM)) : null,
+    rule: declared.includeEnergyBeforeStart ?? false,
+    normaliseBy: declared.normaliseBy ?? 'M',
+    binary: binaryOfClaim(declared, waveform),
+  };
+}
+
+interface Row {
+  readonly name: SettingName;
+  readonly value: unknown;
+  readonly unit?: string;
+  /** Could another choice of this setting change the value of this claim? */
+  readonly matters: boolean;
+}
+
+function rowsOf(used: EnergySettings, waveform: Waveform, record: RadiationRecord): Row[] {
+  const knowsOtherMass = waveform.binary.admEnergy !== undefined || waveform.binary.remnantMass !== undefined;
+  const evolves = used.rule === 'removed';
+  const rows: Row[] = [
+    { name: 'modes', value: used.modes, matters: record.modes.length > 1 },
+    { name: 'startM', value: used.startM, unit: 'M', matters: waveform.junkEndM === null },
+    { name: 'includeEnergyBeforeStart', value: used.rule, matters: true },
+    { name: 'normaliseBy', value: used.normaliseBy, matters: knowsOtherMass },
+  ];
+  if (used.lMax !== null) rows.push({ name: 'lMax', value: used.lMax, matters: true });
+  if (used.floor !== null) rows.push({ name: 'integrationFloor', value: used.floor, unit: 'rad/M', matters: true });
+  if (used.rule !== false && used.binary !== null) {
+    const { massRatio, chi1z, chi2z } = used.binary;
+    rows.push({ name: 'massRatio', value: massRatio, matters: false });
+    rows.push({ name: 'chi1z', value: chi1z, matters: evolves && waveform.binary.chi1z === undefined });
+    rows.push({ name: 'chi2z', value: chi2z, matters: evolves && waveform.binary.chi2z === undefined });
+  }
+  return rows;
+}
+
+/** The settings as a reader sees them, and the names of house defaults that could change the value. */
+export function settingsUsed(used: EnergySettings, declared: DeclaredSettings, swept: SettingName | null, waveform: Waveform, record: RadiationRecord): { settings: UsedSetting[]; assumed: string[] } {
+  const rows = rowsOf(used, waveform, record);
+  const standing = (name: SettingName): UsedSetting['standing'] => (name === swept ? 'swept' : declared[name] === undefined ? 'assumed' : 'declared');
+  const settings = rows.map(({ name, value, unit }): UsedSetting => ({ name, value, standing: standing(name), ...(unit === undefined ? {} : { unit }) }));
+  return { settings, assumed: rows.filter(({ name, matters }) => matters && standing(name) === 'assumed').map(({ name }) => name) };
+}
