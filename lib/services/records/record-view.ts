@@ -1,3 +1,4 @@
+import type { VerdictWord } from '@/lib/pipeline/result';
 import type { RecordDocument } from '@/lib/badges/record';
 import type { SignatureDocument } from '@/lib/badges/signature';
 import type { RecordStanding } from '@/lib/badges/standing';
@@ -33,5 +34,5 @@ export interface RegisterRow {
   readonly level: number;
   readonly standing: RecordStanding;
   readonly quantities: readonly string[];
-  readonly verdicts: readonly string[];
+  readonly verdicts: readonly VerdictWord[];
 }

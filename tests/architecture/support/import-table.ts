@@ -45,6 +45,7 @@ export const DOORS: readonly { readonly from: string; readonly to: string; reado
   { from: 'db/schema/', to: 'lib/reviews/', why: 'the words a column may hold are the list of the domain, written once' },
   { from: 'db/schema/', to: 'lib/badges/', why: 'the same' },
   { from: 'lib/worker/main', to: 'lib/tools/process', why: 'the manners of a supervised process are written once' },
+  { from: 'lib/signer/main', to: 'lib/tools/process', why: 'the same' },
 ];
 
 /** Packages that stay behind a room, whatever the table says. */

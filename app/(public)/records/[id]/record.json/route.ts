@@ -1,0 +1,6 @@
+import { servePart } from '../../serve-part';
+
+export const runtime = 'nodejs';
+export const dynamic = 'force-dynamic';
+
+export const GET = servePart('GET /records/{id}/record.json', 'record');
