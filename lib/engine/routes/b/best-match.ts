@@ -126,6 +126,16 @@ function searchPoses(request: MatchRequest, search: Search): Tried {
 
 const wrapped = (angle: number): number => angle - 2 * Math.PI * Math.ceil((angle - Math.PI) / (2 * Math.PI));
 
+/** The free turn under the contract's names: an advance of b's phase, a change of its azimuth, or a polarisation angle. */
+function turnsOf(request: MatchRequest, best: Tried): Pick<MatchOutcome, 'phaseShiftRad' | 'polarisationRad'> {
+  const { turnRad } = best.peak;
+  // A real response at f > 0 holds e^{+iφ}, the complex z = h₊ − ih× holds e^{−iφ}.
+  if (request.response !== 'complex') return { phaseShiftRad: wrapped(turnRad) };
+  const polarisation = request.maximise.includes('polarisation') ? { polarisationRad: turnRad / 2 } : {};
+  if (request.b.waveform.content.kind === 'modes') return { phaseShiftRad: wrapped(best.pose.azimuthRad - request.b.azimuthRad), ...polarisation };
+  return request.maximise.includes('phase') ? { phaseShiftRad: wrapped(-turnRad) } : { phaseShiftRad: 0, ...polarisation };
+}
+
 /**
  * The match of rule 2.7 by search over poses and shifts of b, with the mismatch as ½‖â − b̂‖² there.
  * Shape:  see MatchRequest and MatchOutcome.
@@ -142,12 +152,10 @@ export function bestMatch(request: MatchRequest, sourceOf: SourceOf, knobs: Rout
   const normB = Math.sqrt(normSquared(channels, weight));
   const mismatch = residualSquared(search.a.channels, search.a.norm, channels, normB, f, weight, best.peak) / 2;
   const { freedom } = search;
-  const outcome: MatchOutcome = {
-    match: best.match,
-    mismatch,
-    timeShiftS: freedom.time ? best.peak.shiftS + search.a.source.centreS - source.centreS : 0,
-    phaseShiftRad: wrapped(freedom.azimuth ? best.pose.azimuthRad - request.b.azimuthRad : best.peak.turnRad),
-  };
+  const timeShiftS = freedom.time ? best.peak.shiftS + search.a.source.centreS - source.centreS : 0;
+  // Below ½ the residual is the sharper of the two and keeps the match at most 1.
+  const match = mismatch < 0.5 ? 1 - mismatch : best.match;
+  const outcome: MatchOutcome = { match, mismatch, timeShiftS, ...turnsOf(request, best) };
   const [low, high] = request.templateMassRange;
   return {
     ...outcome,

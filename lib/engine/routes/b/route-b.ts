@@ -4,6 +4,7 @@ import { channelsOf, normSquared } from './channels';
 import { DEFAULT_GOAL } from './frequency-panels';
 import { frequencySource } from './frequency-source';
 import { alignedResidual, bestMatch } from './best-match';
+import { modeGram, type Sight } from './mode-gram';
 import { nodesFor } from './shared-nodes';
 import type { RouteBKnobs, Source } from './spectrum';
 import { timeSource } from './time-source';
@@ -26,7 +27,19 @@ function gram(side: Side, band: Band, knobs: RouteBKnobs): ResponseGram {
   return { plusPlus: xx, crossCross: yy, plusCross: -xy };
 }
 
+/** Several lines of sight: transforms and sums over frequency once, then 2 × 2 forms of the harmonics. */
+function grams(side: Side, band: Band, sights: readonly Sight[], knobs: RouteBKnobs): readonly ResponseGram[] {
+  if (side.waveform.content.kind !== 'modes') {
+    const one = gram(side, band, knobs);
+    return sights.map(() => one);
+  }
+  const source = sourceOf(side, knobs);
+  const nodes = nodesFor([source], band, knobs, { allModes: true });
+  return sights.map(modeGram(source.modes(nodes.f), nodes.weight));
+}
+
 function modePower(side: Side, band: Band, knobs: RouteBKnobs): number {
+  if (side.waveform.content.kind !== 'modes') return Number.NaN;
   const source = sourceOf(side, knobs);
   const nodes = nodesFor([source], band, knobs, { allModes: true });
   // |z(f)|² + |z(−f)|² is what the complex channels carry, with prefactor 2.
@@ -51,6 +64,7 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
   return {
     name: 'B',
     gram: (side, band) => gram(side, band, knobs),
+    grams: (side, band, sights) => grams(side, band, sights, knobs),
     modePower: (side, band) => modePower(side, band, knobs),
     overlap,
     match: (request) => bestMatch(request, source, knobs),
