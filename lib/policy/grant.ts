@@ -56,7 +56,7 @@ export function maySee(actor: Actor, facts: SubmissionFacts): boolean {
   if (actor.kind === 'worker' || isPublic(facts)) return true;
   const standings = standingsOf(actor, facts);
   // An invitation names the submission, though it shows no package yet.
-  return standings.includes('invited') || VIEWS.some((view) => hasSomethingToShow(view, facts) && standings.some((s) => (ruleOf(view)[s] ?? []).includes(facts.state)));
+  return (facts.everLodged && standings.includes('invited')) || VIEWS.some((view) => hasSomethingToShow(view, facts) && standings.some((s) => (ruleOf(view)[s] ?? []).includes(facts.state)));
 }
 
 function refusal(allowed: readonly SubmissionState[], state: SubmissionState): Denied {

@@ -2,6 +2,7 @@ import { and, asc, eq, lte, sql } from 'drizzle-orm';
 import type { Database, Transaction } from '@/db/client';
 import { outbox } from '@/db/schema/outbox';
 
+/** Delivery takes no Grant: the act that wrote a mail had one, and only the worker's role can mark it. */
 export type OutboxRow = typeof outbox.$inferSelect;
 
 /** The oldest mail that is due, held by this transaction; others skip it. Undefined when nothing is due. */

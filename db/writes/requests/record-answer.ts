@@ -9,7 +9,7 @@ export interface KeptAnswer {
   readonly body: unknown;
 }
 
-/** A second row under the same key violates the primary key and undoes the second act with it. */
+/** A second row under the same key violates the primary key and undoes the second act with it. Takes no Grant: the act it belongs to had one. */
 export async function recordAnswer(tx: Transaction, answer: KeptAnswer): Promise<void> {
   await tx.insert(idempotencyKeys).values(answer);
 }

@@ -7,7 +7,7 @@ export type RunFinding =
   | { readonly outcome: 'measured'; readonly engine: string; readonly result: ResultDocument; readonly figures: FiguresByClaim; readonly resultDigest: string }
   | { readonly outcome: 'refused'; readonly engine: string; readonly problems: readonly Problem[] };
 
-/** False when the run has a result already: the first to arrive stands. Only the worker's role can write here. */
+/** False when the run has a result already: the first to arrive stands. Takes no Grant: only the worker's role can write here. */
 export async function recordResult(tx: Transaction, runId: string, finding: RunFinding): Promise<boolean> {
   const written = await tx.insert(runResults).values({ runId, ...finding }).onConflictDoNothing().returning({ runId: runResults.runId });
   return written.length === 1;

@@ -1,0 +1,17 @@
+import type { DoorPolicy } from './doors';
+
+/**
+ * Every page and what it asks of policy before it shows anything. A page whose data a service gives
+ * names that service's action; the matrix test fails for a page that is not here.
+ */
+export const PAGE_DOORS = {
+  'page /': ['anyone'],
+  'page /methods': ['anyone'],
+  'page /methods/{quantity}': ['anyone'],
+  'page /methods/glossary': ['anyone'],
+  'page /sign-in': ['anyone'],
+  'page /sign-up': ['anyone'],
+  'page /forgotten-password': ['anyone'],
+  'page /reset-password': ['anyone'],
+  'page /account': ['account.read-own'],
+} as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;
