@@ -1,0 +1,82 @@
+/**
+ * Threads: the pipeline off the main thread, so that the queue, the database and the clock of the
+ * worker process go on while numbers are computed. A run can be stopped at once, takes no longer
+ * than its limit, and cannot fill the heap of the process.
+ */
+import { availableParallelism, tmpdir } from 'node:os';
+import { MessageChannel } from 'node:worker_threads';
+import { Piscina } from 'piscina';
+import type { Problem } from '@/lib/kernel/problem';
+import { err } from '@/lib/kernel/result';
+import type { ComputeSheet, SheetJob, SheetWatch } from '../compute';
+import type { ProgressNote, SheetTask } from './sheet-task';
+
+export interface ThreadLimits {
+  readonly threads: number;
+  readonly timeLimitMs: number;
+  /** Heap of one thread. Samples lie outside it: the readers' limits on rows and cells bound those. */
+  readonly heapMb: number;
+}
+
+export const houseLimits: ThreadLimits = { threads: Math.min(2, availableParallelism()), timeLimitMs: 10 * 60_000, heapMb: 768 };
+
+export interface SheetThreads {
+  readonly run: ComputeSheet;
+  readonly close: () => Promise<void>;
+}
+
+const openPool = (limits: ThreadLimits): Piscina<SheetTask, Awaited<ReturnType<ComputeSheet>>> =>
+  new Piscina({
+    filename: new URL('./sheet-thread-entry.mjs', import.meta.url).href,
+    // The thread reads hostile files: it gets none of the secrets that this process holds.
+    env: { NODE_ENV: process.env.NODE_ENV ?? 'production', TMPDIR: tmpdir() },
+    minThreads: 0,
+    maxThreads: limits.threads,
+    // An idle thread keeps spectra of its last sheet; let them go.
+    idleTimeout: 20_000,
+    resourceLimits: { maxOldGenerationSizeMb: limits.heapMb, maxYoungGenerationSizeMb: 64 },
+  });
+
+export function openSheetThreads(limits: ThreadLimits = houseLimits): SheetThreads {
+  const pool = openPool(limits);
+  const run: ComputeSheet = async (job, watch) => {
+    const { port1, port2 } = new MessageChannel();
+    port1.on('message', ({ fraction, doing }: ProgressNote) => watch.onProgress(fraction, doing));
+    const limit = AbortSignal.timeout(limits.timeLimitMs);
+    const task: SheetTask = { ...job, port: port2 };
+    try {
+      return await pool.run(task, { transferList: [port2], signal: AbortSignal.any([watch.signal, limit]) });
+    } catch (thrown) {
+      return err([problemOf(thrown, watch, limit, limits)]);
+    } finally {
+      port1.close();
+    }
+  };
+  return { run, close: () => pool.destroy() };
+}
+
+function problemOf(thrown: unknown, watch: SheetWatch, limit: AbortSignal, limits: ThreadLimits): Problem {
+  if (watch.signal.aborted) return { code: 'worker/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' };
+  if (limit.aborted)
+    return {
+      code: 'worker/time-limit',
+      where: '',
+      saw: `a run longer than ${limits.timeLimitMs / 1000} s`,
+      expected: 'a run within that time',
+      hint: 'Split the sheet into several, or thin the waveforms.',
+    };
+  if (thrown instanceof Error && 'code' in thrown && thrown.code === 'ERR_WORKER_OUT_OF_MEMORY')
+    return {
+      code: 'worker/memory',
+      where: '',
+      saw: `a run that needs more than ${limits.heapMb} MB of heap`,
+      expected: 'a run within that bound',
+      hint: 'Split the sheet into several, or thin the waveforms.',
+    };
+  throw thrown;
+}
+
+let shared: SheetThreads | null = null;
+
+/** The worker process's own pool, opened at the first run. */
+export const runSheet: ComputeSheet = (job: SheetJob, watch: SheetWatch) => (shared ??= openSheetThreads()).run(job, watch);

@@ -1,0 +1,51 @@
+import { createHash } from 'node:crypto';
+import { createReadStream } from 'node:fs';
+import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
+import { reproduce } from '@/lib/pipeline/reproduce';
+import type { ProgressNote, SheetTask } from './sheet-task';
+
+/**
+ * Runs inside a worker thread: one sheet through the whole pipeline. It is given paths, never an
+ * environment, a database or a store. Cancelling ends the thread from outside: a loop over samples
+ * cannot listen for messages.
+ */
+export default async function sheetThread({ sheet, files, withFigures, port }: SheetTask): ReturnType<typeof reproduce> {
+  const note = (fraction: number, doing: string): void => port.postMessage({ fraction, doing } satisfies ProgressNote);
+  try {
+    return await reproduce(
+      { sheetJson: sheet, openFile: openAmong(files) },
+      { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256 },
+    );
+  } finally {
+    port.close();
+  }
+}
+
+/** Only files that were handed over: a sheet that names another learns nothing about this machine. */
+function openAmong(files: SheetTask['files']): OpenFile {
+  const paths = new Map(files.map(({ name, path }) => [name, path]));
+  return (name) => {
+    const path = paths.get(name);
+    if (path === undefined)
+      throw new FileRefused('no file of this name', 'the file among those attached', 'Attach the file, or correct its name in the sheet.');
+    return createReadStream(path, { highWaterMark: 2 ** 20 });
+  };
+}
+
+function sha256(): { update: (bytes: Uint8Array) => void; hex: () => string } {
+  const hash = createHash('sha256');
+  return { update: (bytes) => void hash.update(bytes), hex: () => hash.digest('hex') };
+}
+
+/** A message costs more than an inner product: tell per cents and new activities, not every point. */
+function onlyNews(note: (fraction: number, doing: string) => void): (fraction: number, doing: string) => void {
+  let told = -1;
+  let toldDoing = '';
+  return (fraction, doing) => {
+    const percent = Math.floor(100 * fraction);
+    if (percent === told && doing === toldDoing) return;
+    told = percent;
+    toldDoing = doing;
+    note(fraction, doing);
+  };
+}

@@ -1,0 +1,57 @@
+import { readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { afterAll, describe, expect, it } from 'vitest';
+import type { SheetJob } from '@/lib/worker/compute';
+import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
+
+const folder = join(process.cwd(), 'content', 'specimens', 'radiated-energy');
+const sheet = JSON.parse(readFileSync(join(folder, 'claim.json'), 'utf8')) as { waveforms: object; claims: object[] };
+const job: SheetJob = { sheet, files: [{ name: 'modes.txt', path: join(folder, 'modes.txt') }], withFigures: true };
+const quiet = { onProgress: () => undefined, signal: new AbortController().signal };
+
+const threads = openSheetThreads({ ...houseLimits, threads: 1 });
+afterAll(() => threads.close());
+
+describe('a sheet in a thread', () => {
+  it('comes back with its result and figures, telling progress that never falls', async () => {
+    const fractions: number[] = [];
+    const run = await threads.run(job, { ...quiet, onProgress: (fraction) => fractions.push(fraction) });
+    if (!run.ok) throw new Error(JSON.stringify(run.error));
+    expect(run.value.result.claims[0]?.verdict).toBe('agrees');
+    expect(run.value.result.files[0]?.name).toBe('modes.txt');
+    expect(run.value.figures.C1?.length).toBeGreaterThan(0);
+    expect(fractions.length).toBeGreaterThan(2);
+    expect([...fractions].sort((a, b) => a - b)).toEqual(fractions);
+  });
+  it('is refused with its problems when it is not a sheet', async () => {
+    const run = await threads.run({ ...job, sheet: { format: 'other' } }, quiet);
+    expect(run.ok ? [] : run.error.length).toBeGreaterThan(0);
+  });
+  it('reads no file that was not handed over', async () => {
+    const run = await threads.run({ ...job, files: [{ name: 'other.txt', path: join(folder, 'modes.txt') }] }, quiet);
+    expect(run.ok ? [] : run.error.map(({ where }) => where)).toEqual([expect.stringContaining('modes.txt')]);
+  });
+  it('stops at once when told to, and the next one still runs', async () => {
+    const stop = new AbortController();
+    const run = await threads.run(job, { onProgress: () => stop.abort(), signal: stop.signal });
+    expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/cancelled']);
+    expect((await threads.run(job, quiet)).ok).toBe(true);
+  });
+});
+
+describe('a thread with narrow limits', () => {
+  it('ends a run that takes too long', async () => {
+    const narrow = openSheetThreads({ ...houseLimits, timeLimitMs: 1 });
+    const run = await narrow.run(job, quiet);
+    await narrow.close();
+    expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/time-limit']);
+  });
+  it('ends a run that fills its heap, and leaves the process alive', async () => {
+    const narrow = openSheetThreads({ ...houseLimits, heapMb: 64 });
+    // Many claims, each kept as objects: what a hostile sheet can grow on the heap.
+    const claims = Array.from({ length: 150_000 }, (_, i) => ({ ...sheet.claims[0], id: `C${i}`, note: `${i}`.repeat(20) }));
+    const run = await narrow.run({ ...job, sheet: { ...sheet, claims } }, quiet);
+    await narrow.close();
+    expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/memory']);
+  });
+});
