@@ -1,7 +1,7 @@
 import type { Claim, ClaimSheet } from '@/lib/claims/claim';
 import { sheetFindings } from '@/lib/claims/sheet-findings';
 import type { Finding } from '@/lib/engine/contract/finding';
-import type { NoiseDeclaration, WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { NoiseDeclaration } from '@/lib/engine/contract/layout';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
@@ -58,19 +58,22 @@ function once(problems: readonly Problem[]): Problem[] {
   return [...new Map(problems.map((problem) => [JSON.stringify(problem), problem])).values()];
 }
 
-/** V28: two files of different names that are the same bytes, in the two roles of one claim. */
+/**
+ * V28: the same bytes for two things that should differ: two waveforms of a claim under different
+ * file names, or two modes of one waveform. One file named for both waveforms is meant that way.
+ */
 export function duplicateFindings(claim: Claim, sheet: ClaimSheet, files: HashedFiles): Finding[] {
-  const of = (role: 'a' | 'b'): WaveformDeclaration | undefined => sheet.waveforms.get(claim.of[role] ?? '');
-  const [a, b] = [of('a'), of('b')];
-  if (!a || !b || claim.of.a === claim.of.b) return [];
-  return a.files.flatMap((first) =>
-    b.files.flatMap((second): Finding[] => {
-      const same = first.file !== second.file && files.sha256(first.file) !== null && files.sha256(first.file) === files.sha256(second.file);
+  const names = [...new Set([claim.of.a, claim.of.b])].filter((name) => name !== undefined);
+  const all = names.flatMap((name) => (sheet.waveforms.get(name)?.files ?? []).map(({ file }) => ({ name, file, sha256: files.sha256(file) })));
+  return all.flatMap((first, i) =>
+    all.slice(i + 1).flatMap((second): Finding[] => {
+      const same = first.sha256 !== null && first.sha256 === second.sha256 && (first.name === second.name || first.file !== second.file);
       if (!same) return [];
+      const oneWaveform = first.name === second.name;
       return [{
-        code: 'formats/duplicate-files', level: 'stops-lodging', where: `${a.name}, ${b.name}`,
-        text: `The files ${first.file} and ${second.file} are identical byte for byte, though the sheet gives them as two waveforms.`,
-        fix: 'Attach the file that was meant, or name one file in both places if the same data are meant.',
+        code: 'formats/duplicate-files', level: 'stops-lodging', where: oneWaveform ? first.name : `${first.name}, ${second.name}`,
+        text: `The files ${first.file} and ${second.file} are identical byte for byte, though the sheet gives them as two ${oneWaveform ? 'modes' : 'waveforms'}.`,
+        fix: oneWaveform ? 'Attach the file of each mode.' : 'Attach the file that was meant, or name one file in both places if the same data are meant.',
       }];
     }),
   );

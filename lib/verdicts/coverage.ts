@@ -20,7 +20,8 @@ const coversFrom = 0.8;
  */
 export function coverageOf(claimed: Claimed, value: number | null, budget: readonly BudgetLine[]): Coverage {
   const missing = budget.filter((line) => !isFiniteNumber(line.u)).map((line) => line.component);
-  if (value === null || budget.length === 0) missing.push('the recomputed value');
+  if (value === null) missing.push('the recomputed value');
+  else if (budget.length === 0) missing.push('the error budget');
   if (missing.length > 0) return { state: 'unknown', missing: [...new Set(missing)] };
   const allowed = expandedOf(budget);
   if (claimed.kind !== 'value') return boundCoverage(claimed, value ?? Number.NaN, allowed);

@@ -27,7 +27,7 @@ export function diagnoseLine(refused: RefusedLine): Problem {
 }
 
 type Cause = Omit<Problem, 'where'>;
-const expectedRow = (r: RefusedLine) => `${r.names.length} numbers (${r.names.join(', ')})`;
+const expectedRow = (r: RefusedLine) => `${r.names.length} numbers (${r.names.slice(0, 8).join(', ')}${r.names.length > 8 ? ', …' : ''})`;
 
 const binary = (text: string, r: RefusedLine): Cause | null =>
   text.includes('\u0000') || text.includes('\ufffd')

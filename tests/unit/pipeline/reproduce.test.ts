@@ -34,7 +34,9 @@ const measured = (request: MeasureRequest, more: Partial<Measurement> = {}): Mea
   ...more,
 });
 
-function run(json: unknown, measure: Measure = measured, given: Files = files, options: Partial<ReproduceOptions> = {}) {
+const plain: Measure = (request) => measured(request);
+
+function run(json: unknown, measure: Measure = plain, given: Files = files, options: Partial<ReproduceOptions> = {}) {
   const openFile = async function* open(name: string) {
     const content = given[name];
     if (content === undefined) throw Object.assign(new Error('ENOENT'), { code: 'ENOENT' });
@@ -92,7 +94,7 @@ describe('a sheet walks from the hall to the weighing room', () => {
   });
 
   it('with figures only when they are asked for, and never in the result', async () => {
-    expect((await reproduced(sheet(), measured, files, { withFigures: true })).figures['C1']).toHaveLength(1);
+    expect((await reproduced(sheet(), plain, files, { withFigures: true })).figures['C1']).toHaveLength(1);
     expect((await reproduced(sheet())).figures).toEqual({});
   });
 
@@ -119,21 +121,32 @@ describe('a claim is not computable, and the others go on', () => {
   const two = sheet([claim(), claim({ id: 'C2', quantity: 'snr', of: { a: 'A' }, settings: { totalMassMsun: 60, distanceMpc: 100 } })]);
 
   it('when a value of its file is not finite', async () => {
-    const { result } = await reproduced(two, measured, { ...files, 'b.txt': '0 1 2\n1 nan 5\n' });
+    const { result } = await reproduced(two, plain, { ...files, 'b.txt': '0 1 2\n1 nan 5\n' });
     expect(result.claims.map((c) => c.verdict)).toEqual(['not-computable', 'agrees']);
     expect(result.claims[0]).toMatchObject({ findings: [{ code: 'formats/not-finite' }], coverage: { state: 'unknown' } });
     expect(result.claims[0]?.points[0]).toMatchObject({ value: null, expandedUncertainty: null, routes: { A: null, B: null }, tolerance: 0.1 + 0.005, apart: null, verdict: 'not-computable' });
   });
 
   it('when the noise curve is not positive', async () => {
-    const only = await onlyClaim(sheet(), measured, { ...files, 'noise.txt': '10 2e-23\n20 0\n' });
+    const only = await onlyClaim(sheet(), plain, { ...files, 'noise.txt': '10 2e-23\n20 0\n' });
     expect(only).toMatchObject({ verdict: 'not-computable', findings: [{ code: 'engine/curve-invalid', where: 'noise.txt:2' }] });
   });
 
   it('when two waveforms are the same file under two names', async () => {
-    const only = await onlyClaim(sheet(), measured, { ...files, 'b.txt': files['a.txt'] ?? '' });
+    const only = await onlyClaim(sheet(), plain, { ...files, 'b.txt': files['a.txt'] ?? '' });
     expect(only).toMatchObject({ verdict: 'not-computable', findings: [{ code: 'formats/duplicate-files', level: 'stops-lodging' }] });
     expect(only.findings[0]?.text).toContain('The files a.txt and b.txt are identical byte for byte');
+  });
+
+  it('when two modes of one waveform are the same bytes', async () => {
+    const waveforms = { A: { files: { '2,2': 'a.txt', '2,-2': 'c.txt' }, columns: ['t', 're', 'im'] }, B: { file: 'b.txt', columns: ['t', 're22', 'im22'] } };
+    const only = await onlyClaim(sheet([claim()], { waveforms }), plain, { ...files, 'c.txt': files['a.txt'] ?? '' });
+    expect(only).toMatchObject({ verdict: 'not-computable', findings: [{ code: 'formats/duplicate-files', where: 'A' }] });
+  });
+
+  it('but not when the sheet names one file in both places', async () => {
+    const twice = { A: { file: 'a.txt', columns: ['t', 're22', 'im22'] }, B: { file: 'a.txt', columns: ['t', 're22', 'im22'] } };
+    expect((await onlyClaim(sheet([claim()], { waveforms: twice }))).findings).toEqual([]);
   });
 
   it('when a spin is above one', async () => {
@@ -174,7 +187,7 @@ describe('facts of the sheet that do not fit are asked about, and the number is 
 describe('a sheet is refused as a whole', () => {
   it('with the faults of all its files, each once', async () => {
     const shared = sheet([claim()], { waveforms: { A: { file: 'a.txt', columns: ['t', 're22', 'im22'] }, B: { file: 'a.txt', columns: ['t', 're22', 'im22'] } } });
-    expect(await refusals(shared, measured, { 'a.txt': '0 1 2\n1 x 4\n' })).toEqual([
+    expect(await refusals(shared, plain, { 'a.txt': '0 1 2\n1 x 4\n' })).toEqual([
       'a.txt:2: saw "x" in column re22; expected a decimal number such as -1.25e-21.',
       'noise.txt: saw no file of this name; expected the file beside the claim sheet. Add the file, or correct its name in the sheet.',
     ]);
@@ -182,7 +195,7 @@ describe('a sheet is refused as a whole', () => {
 
   it('when it is to stop, whether before or within a measurement', async () => {
     const stopped = ['saw a request to stop; expected the run to be let finish.'];
-    expect((await refusals(sheet(), measured, files, { cancelled: () => true })).map((line) => line.replace(/^: /, ''))).toEqual(stopped);
+    expect((await refusals(sheet(), plain, files, { cancelled: () => true })).map((line) => line.replace(/^: /, ''))).toEqual(stopped);
     const within: Measure = () => {
       throw new Cancelled();
     };
