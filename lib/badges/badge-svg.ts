@@ -82,6 +82,9 @@ function teeth(height: number, count: number, down: boolean): string {
 const advanceOf = (letter: string): number => (letter === ' ' ? SPACE_ADVANCE : (GLYPHS[letter]?.[0] ?? 0));
 const widthOf = (text: string): number => [...text].reduce((sum, letter) => sum + advanceOf(letter), 0);
 
+/** One letter each; T and D are the title's and the description's. */
+const IDS = 'abcdefghijklmnopqrstuvwxyzABCEFGHIJKLMNOPQRSUVWXYZ';
+
 class Letters {
   private readonly ids = new Map<string, string>();
 
@@ -103,7 +106,7 @@ class Letters {
     if (!GLYPHS[letter]) throw new Error(`the badge has no outline for “${letter}”`);
     const known = this.ids.get(letter);
     if (known) return known;
-    const id = this.ids.size < 26 ? String.fromCharCode(97 + this.ids.size) : `a${this.ids.size}`;
+    const id = IDS[this.ids.size] ?? `a${this.ids.size}`;
     this.ids.set(letter, id);
     return id;
   }
