@@ -23,6 +23,11 @@ export default defineConfig([
     },
   },
   {
+    // No components live there; `useDatabase` and its like are ordinary functions.
+    ignores: ['app/**', 'tests/unit/ui/**'],
+    rules: { 'react-hooks/rules-of-hooks': 'off', '@next/next/no-assign-module-variable': 'off' },
+  },
+  {
     files: ['**/*.{ts,tsx}'],
     // Sample loops index arrays whose length they just took; their tests do the same.
     ignores: ['lib/engine/**', 'lib/formats/**', 'tests/{unit/engine,golden,properties,convergence,bench}/**'],
