@@ -6,6 +6,8 @@ export interface BinWeights {
   readonly first: number;
   readonly values: Float64Array;
   readonly dfHz: number;
+  /** Bins around the band's edges with what two orders lower would change in their weights: how far the edges are resolved. */
+  readonly doubt: readonly { readonly bin: number; readonly weight: number }[];
 }
 
 export interface BinRange {
@@ -45,11 +47,13 @@ interface Builder {
   readonly last: number;
   readonly logF: (bin: number) => number;
   readonly share: Float64Array;
+  readonly doubt: { bin: number; weight: number }[];
 }
 
 /** Places `order` end weights around an edge at f; direction +1 integrates upwards from it, −1 up to it. */
-function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weigh: (bin: number) => number, closedForm: boolean): void {
+function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weigh: (bin: number) => number, isKink = false): void {
   const { range } = b;
+  const { closedForm } = b.weigher;
   const place = fHz / range.dfHz;
   const inside = direction > 0 ? Math.ceil(place) : Math.floor(place);
   const low = closedForm ? Math.max(b.first, Math.ceil((range.curveLowHz / range.dfHz) * (1 - 1e-12))) : b.first;
@@ -60,9 +64,19 @@ function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weig
   // Stencil bins are inside + direction × (offset + j): keep all of them between low and high.
   const offset = direction > 0 ? clamp(centred, low - inside, high - inside - most + 1) : clamp(centred, inside - high, inside - low - most + 1);
   edgeRule(most, offset).weightsAt(Math.abs(inside - place), b.share);
+  const doubtful = !isKink;
   for (let j = 0; j < most; j++) {
     const bin = inside + direction * (offset + j);
-    b.values[bin - b.first]! += b.share[j]! * weigh(bin);
+    const added = b.share[j]! * weigh(bin);
+    b.values[bin - b.first]! += added;
+    if (doubtful) b.doubt.push({ bin, weight: added });
+  }
+  if (!doubtful || most < 4) return;
+  const fewer = most - 2;
+  edgeRule(fewer, offset + 1).weightsAt(Math.abs(inside - place), b.share);
+  for (let j = 0; j < fewer; j++) {
+    const bin = inside + direction * (offset + 1 + j);
+    b.doubt.push({ bin, weight: -b.share[j]! * weigh(bin) });
   }
 }
 
@@ -86,7 +100,7 @@ function addKinks(b: Builder): void {
     const [above, below] = [ratio(1), ratio(-1)];
     if ((above + below) * step < LEAST_KINK || above + below === 0) continue;
     const order = kinkOrder(Math.max(above, below), range.order);
-    addEdge(b, f, 1, order, (bin) => weigher.continuedAt(i, 1, b.logF(bin)) - weigher.continuedAt(i, -1, b.logF(bin)), false);
+    addEdge(b, f, 1, order, (bin) => weigher.continuedAt(i, 1, b.logF(bin)) - weigher.continuedAt(i, -1, b.logF(bin)), true);
   }
 }
 
@@ -100,21 +114,20 @@ function addKinks(b: Builder): void {
  */
 export function binWeights(weigher: NoiseWeigher, range: BinRange): BinWeights {
   const { dfHz, fLowHz, fHighHz } = range;
-  const { closedForm } = weigher;
   const inLow = Math.max(range.firstBin, Math.ceil(fLowHz / dfHz));
   const inHigh = Math.min(range.lastBin, Math.floor(fHighHz / dfHz));
   const first = Math.max(range.firstBin, inLow - range.order);
   const last = Math.min(range.lastBin, inHigh + range.order);
-  if (!(fHighHz > fLowHz) || last < first) return { first: range.firstBin, values: new Float64Array(0), dfHz };
+  if (!(fHighHz > fLowHz) || last < first) return { first: range.firstBin, values: new Float64Array(0), dfHz, doubt: [] };
   const logs = logBins(last);
   const offset = Math.log(dfHz);
   const values = new Float64Array(last - first + 1);
   if (inHigh >= inLow) weigher.fill(values.subarray(inLow - first, inHigh - first + 1), logs, inLow, inHigh, offset);
-  const b: Builder = { range, weigher, values, first, last, logF: (bin) => logs[bin]! + offset, share: new Float64Array(range.order) };
+  const b: Builder = { range, weigher, values, first, last, logF: (bin) => logs[bin]! + offset, share: new Float64Array(range.order), doubt: [] };
   const lowKink = weigher.firstKinkAbove(fLowHz);
   const highKink = weigher.firstKinkAbove(fHighHz * (1 - 1e-15));
-  addEdge(b, fLowHz, 1, range.order, (bin) => weigher.continuedAt(lowKink, -1, b.logF(bin)), closedForm);
-  addEdge(b, fHighHz, -1, range.order, (bin) => weigher.continuedAt(highKink, -1, b.logF(bin)), closedForm);
+  addEdge(b, fLowHz, 1, range.order, (bin) => weigher.continuedAt(lowKink, -1, b.logF(bin)));
+  addEdge(b, fHighHz, -1, range.order, (bin) => weigher.continuedAt(highKink, -1, b.logF(bin)));
   addKinks(b);
-  return { first, values, dfHz };
+  return { first, values, dfHz, doubt: b.doubt };
 }

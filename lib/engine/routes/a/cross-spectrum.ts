@@ -112,7 +112,8 @@ export function power(channel: Channel, weights: BinWeights): number {
   const { re, im } = channel;
   let sum = 0;
   for (let j = 0; j < values.length; j++) {
-    const [x, y] = [re[first + j]!, im[first + j]!];
+    const x = re[first + j]!;
+    const y = im[first + j]!;
     sum += values[j]! * (x * x + y * y);
   }
   return sum;

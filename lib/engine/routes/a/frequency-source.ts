@@ -1,6 +1,6 @@
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
-import { interpolatePair } from '@/lib/engine/series/local-interpolation';
+import { interpolatePair, type UniformGrid } from '@/lib/engine/series/local-interpolation';
 import { interpolateThroughPolar, isFinelySampled, polarOf, type ComplexSeries } from '@/lib/engine/series/polar';
 import { derivativeOrder, type Spectrum } from './spectrum';
 
@@ -73,14 +73,17 @@ function advanced(axis: Float64Array, s: ComplexSeries, t0: number): ComplexSeri
   return out;
 }
 
+function interpolateFine(axis: Float64Array, s: ComplexSeries, grid: UniformGrid, order: number): ComplexSeries {
+  const [re, im] = interpolatePair({ axis, first: s.re, second: s.im }, grid, order);
+  return { re, im };
+}
+
 function onBins(axis: Float64Array, s: ComplexSeries, dF: number, first: number, last: number, order: number, power: number): ComplexSeries {
   const grid = { t0: first * dF, dt: dF, n: last - first + 1 };
-  const pair = isFinelySampled(s)
-    ? interpolatePair({ axis, first: s.re, second: s.im }, grid, order)
-    : Object.values(interpolateThroughPolar(axis, s, polarOf(s), grid, order));
+  const { re, im } = isFinelySampled(s) ? interpolateFine(axis, s, grid, order) : interpolateThroughPolar(axis, s, polarOf(s), grid, order);
   const out = zeros(last + 1);
   for (let k = first; k <= last; k++) {
-    const [x, y] = [pair[0]![k - first]!, pair[1]![k - first]!];
+    const [x, y] = [re[k - first]!, im[k - first]!];
     const w = 2 * Math.PI * k * dF;
     out.re[k] = power === 0 ? x : power === 1 ? y / w : -x / (w * w);
     out.im[k] = power === 0 ? y : power === 1 ? -x / w : -y / (w * w);
@@ -90,9 +93,10 @@ function onBins(axis: Float64Array, s: ComplexSeries, dF: number, first: number,
 
 export interface FrequencySource {
   readonly waveform: Waveform;
-  /** Range of group delays: the length in time of what the file holds. */
+  /** Range of group delays: about the length in time of what the file holds; the bins are halved until sums settle. */
   readonly span: number;
-  readonly spectrum: (dF: number, order: number, weigh: (l: number, m: number) => { re: number; im: number }) => Spectrum;
+  /** Bins up to fTop only (per unit): a file may reach far beyond the band. */
+  readonly spectrum: (dF: number, order: number, fTop: number, weigh: (l: number, m: number) => { re: number; im: number }) => Spectrum;
 }
 
 /**
@@ -110,14 +114,14 @@ export function frequencySource(waveform: Waveform): FrequencySource {
     waveform.content.kind === 'modes' ? ofModes(waveform, weigh) : ofLineOfSight(waveform);
   const delays = delaysOf(axis, pairOf(weighAll));
   const power = derivativeOrder(waveform.variable);
-  const spectrum: FrequencySource['spectrum'] = (dF, order, weigh) => {
+  const spectrum: FrequencySource['spectrum'] = (dF, order, fTop, weigh) => {
     const pair = pairOf(weigh);
     const first = Math.max(1, Math.ceil(axis[0]! / dF));
-    const last = Math.floor(axis[axis.length - 1]! / dF);
+    const last = Math.max(first, Math.min(Math.floor(axis[axis.length - 1]! / dF), Math.ceil(fTop / dF) + order));
     const z = onBins(axis, advanced(axis, pair.z, delays.mean), dF, first, last, order, power);
     const y = onBins(axis, advanced(axis, pair.y, delays.mean), dF, first, last, order, power);
     const ends = { fFirst: axis[0]!, fLast: axis[axis.length - 1]!, endsEarly: false };
     return { dF, zRe: z.re, zIm: z.im, yRe: y.re, yIm: y.im, firstBin: first, lastBin: last, referenceTime: delays.mean, ...ends };
   };
-  return { waveform, span: delays.span + 1 / Math.max(axis[0]!, 1e-300), spectrum };
+  return { waveform, span: delays.span + 1 / (axis[axis.length - 1]! - axis[0]!), spectrum };
 }

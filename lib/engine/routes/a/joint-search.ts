@@ -81,7 +81,7 @@ export class JointSearch {
     const sides = [request.a, b] as const;
     const longest = searched.mass ? { longestS: this.longestS() } : {};
     const prepared = prepare({ sides, band: request.band, absoluteTimes: !request.maximise.includes('time'), ...longest }, store, numerics);
-    const bank = searched.inclination || searched.azimuth ? modeBank(b, prepared.dF[1]!, store, numerics) : null;
+    const bank = searched.inclination || searched.azimuth ? modeBank(b, prepared.dF[1]!, request.band.fHighHz * b.secondsPerUnit, store, numerics) : null;
     this.slice = { factor, sides, prepared, bank };
     return this.slice;
   }

@@ -109,40 +109,64 @@ interface Core {
   readonly to: number;
 }
 
+/** |re| + |im| of both sides at one bin: at most √2 times the modulus. */
+function sizeAt(c: CrossSpectrum, j: number): number {
+  const plus = Math.abs(c.plusRe[j]!) + Math.abs(c.plusIm[j]!);
+  return c.minusRe === null ? plus : plus + Math.abs(c.minusRe[j]!) + Math.abs(c.minusIm![j]!);
+}
+
 /** The bins that hold all but a hundredth of Σ|c_j|: only they are needed to find the cell of the maximum. */
 function coreOf(c: CrossSpectrum): Core {
-  const size = (j: number): number =>
-    Math.abs(c.plusRe[j]!) + Math.abs(c.plusIm[j]!) + (c.minusRe === null ? 0 : Math.abs(c.minusRe[j]!) + Math.abs(c.minusIm![j]!));
   let total = 0;
-  for (let j = 0; j < c.n; j++) total += size(j);
+  for (let j = 0; j < c.n; j++) total += sizeAt(c, j);
   let to = c.n;
-  for (let left = 0; to > 1 && (left += size(to - 1)) < 0.005 * total; ) to--;
+  for (let left = 0; to > 1 && (left += sizeAt(c, to - 1)) < 0.005 * total; ) to--;
   let from = 0;
-  for (let left = 0; from < to - 1 && (left += size(from)) < 0.005 * total; ) from++;
+  for (let left = 0; from < to - 1 && (left += sizeAt(c, from)) < 0.005 * total; ) from++;
   return { from, to };
 }
 
-/** |c| or Re c on a grid of shifts i/N, at least twice as fine as the core's bandwidth. */
+interface Scratch {
+  readonly data: Float64Array;
+  readonly out: Float64Array;
+  readonly values: Float64Array;
+}
+
+/** Buffers of the last size used: a sweep asks for the same one hundreds of times. */
+let scratch: Scratch | null = null;
+function scratchOf(size: number): Scratch {
+  if (scratch?.values.length !== size) scratch = { data: new Float64Array(2 * size), out: new Float64Array(2 * size), values: new Float64Array(size) };
+  scratch.data.fill(0);
+  return scratch;
+}
+
+/** |c|² or Re c on a grid of shifts i/N, at least twice as fine as the core's bandwidth. */
 function coarseGrid(c: CrossSpectrum, objective: Objective): Float64Array {
   const { from, to } = coreOf(c);
   const oneSided = objective === 'modulus' && c.minusRe === null;
   // With one side and a free phase the carrier drops out, and the band may be moved to bin 0.
   const moved = oneSided ? c.first + from : 0;
   const size = powerOfTwoFrom(oneSided ? 2 * (to - from) : 4 * (c.first + to));
-  const data = new Float64Array(2 * size);
+  const { data, out, values } = scratchOf(size);
+  const { plusRe, plusIm, minusRe, minusIm, first } = c;
   for (let j = from; j < to; j++) {
-    const at = 2 * (c.first + j - moved);
-    data[at]! += c.plusRe[j]!;
-    data[at + 1]! += c.plusIm[j]!;
-    if (c.minusRe === null) continue;
-    const mirror = 2 * (size - (c.first + j));
-    data[mirror]! += c.minusRe[j]!;
-    data[mirror + 1]! += c.minusIm![j]!;
+    const at = 2 * (first + j - moved);
+    data[at]! += plusRe[j]!;
+    data[at + 1]! += plusIm[j]!;
   }
-  const out = new Float64Array(2 * size);
+  if (minusRe !== null && minusIm !== null) {
+    for (let j = from; j < to; j++) {
+      const mirror = 2 * (size - (first + j));
+      data[mirror]! += minusRe[j]!;
+      data[mirror + 1]! += minusIm[j]!;
+    }
+  }
   transformOfSize(size).inverse(out, data);
-  const values = new Float64Array(size);
-  for (let i = 0; i < size; i++) values[i] = objective === 'real' ? out[2 * i]! : out[2 * i]! * out[2 * i]! + out[2 * i + 1]! * out[2 * i + 1]!;
+  for (let i = 0; i < size; i++) {
+    const re = out[2 * i]!;
+    const im = out[2 * i + 1]!;
+    values[i] = objective === 'real' ? re : re * re + im * im;
+  }
   return values;
 }
 

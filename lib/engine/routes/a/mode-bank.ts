@@ -14,10 +14,10 @@ interface BankedMode {
 /** The spectra of all modes of one side, from which any line of sight is a sum. */
 export type ModeBank = readonly BankedMode[];
 
-export function modeBank(side: Side, dF: number, store: SpectrumStore, numerics: Numerics): ModeBank {
+export function modeBank(side: Side, dF: number, fTop: number, store: SpectrumStore, numerics: Numerics): ModeBank {
   const { content } = side.waveform;
   if (content.kind !== 'modes') return [];
-  return content.modes.map(({ l, m }, index) => ({ l, m, spectrum: sideSpectrum(side, { kind: 'mode', index }, dF, store, numerics) }));
+  return content.modes.map(({ l, m }, index) => ({ l, m, spectrum: sideSpectrum(side, { kind: 'mode', index }, dF, fTop, store, numerics) }));
 }
 
 function addMode(sum: Spectrum, mode: Spectrum, re: number, im: number, from: number, to: number): void {

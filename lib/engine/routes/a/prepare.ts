@@ -29,10 +29,18 @@ export interface PrepareRequest {
 const LAG_ROOM = 1.02;
 /** Bins between the band's edges, at least. */
 const LEAST_BINS = 64;
+/** A frequency-domain file says nothing finer than its own interpolation does. */
+const MOST_FILE_BINS = 1 << 18;
 /** Fraction of a waveform's weighted power allowed in the top of its own grid before the step is halved. */
 const EMPTY_TOP = 1e-13;
 const TOP_PART = 0.85;
-const FREQUENCY_FILE_BINS = 4096;
+/** Weighted power that adds nothing to a double. */
+const UNSEEN = 1e-17;
+const TRIM_BLOCK = 64;
+/** Bins are halved until two orders less at the band's edges, or (for a file without a length) half the bins, move the power by less. */
+const SETTLED = 3e-9;
+/** Longest padding that an edge may ask for, as halvings of the first bins. */
+const MOST_EDGE_DOUBLINGS = 8;
 
 const spanS = (side: Side, store: SpectrumStore): number =>
   side.secondsPerUnit * (side.waveform.domain === 'frequency' ? store.frequency(side.waveform).span : store.time(side.waveform).span);
@@ -63,41 +71,51 @@ export function contentBand(sides: readonly Side[], band: Band, store: SpectrumS
   return { low: Math.max(band.fLowHz, ...ends.map(([low]) => low)), high: Math.min(band.fHighHz, ...ends.map(([, high]) => high)) };
 }
 
-/** Bin spacing that the noise and the band ask for, in Hz. */
-function bandSpacing(request: PrepareRequest, store: SpectrumStore, numerics: Numerics): number {
-  const { low, high } = contentBand(request.sides, request.band, store);
-  const weigher = store.weigher(request.band.noise, numerics.noiseTableHalvings);
-  const steep = Math.max(6, weigher.steepness(request.band.fLowHz, request.band.fHighHz));
-  const file = request.sides.some((side) => side.waveform.domain === 'frequency') ? (high - low) / FREQUENCY_FILE_BINS : Infinity;
-  return Math.min(low / (4 * steep), (high - low) / LEAST_BINS, weigher.kinkResolutionHz(low, high), file);
+interface Spacing {
+  /** In each side's own unit. */
+  readonly dF: readonly number[];
+  /** Halvings of the bins in use, before the knob, and those that a steep or distant edge might need. */
+  readonly doublings: number;
+  readonly mostDoublings: number;
 }
 
+/** Halvings after which 1/(lag·2^n) is at most the spacing wanted. */
+const doublingsTo = (lag: number, wanted: number): number => Math.max(0, Math.min(40, Math.ceil(Math.log2(1 / (lag * wanted)) - 1e-9) || 0));
+
 /**
- * Spacing in the first side's unit. It does not depend on the mass unless the noise asks for finer
- * bins, and then only in powers of two, so that one transform serves many masses.
+ * Spacing of the bins. It does not depend on the mass unless the noise asks for finer bins, and
+ * then only in powers of two, so that one transform serves many masses.
  */
-function spacing(request: PrepareRequest, store: SpectrumStore, numerics: Numerics): number[] {
-  const [a] = request.sides;
-  const perUnit = a!.secondsPerUnit;
+function spacing(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, extra: number): Spacing {
+  const perUnit = request.sides[0]!.secondsPerUnit;
   const ratios = request.sides.map((side) => Number((side.secondsPerUnit / perUnit).toPrecision(14)));
   const lag = Number((longestLagS(request, store) / perUnit).toPrecision(13)) * LAG_ROOM;
-  const wanted = bandSpacing(request, store, numerics) * perUnit;
-  let doublings = 0;
-  while (1 / (lag * 2 ** doublings) > wanted && doublings < 40) doublings++;
-  doublings += numerics.padDoublings;
+  const { low, high } = contentBand(request.sides, request.band, store);
+  const weigher = store.weigher(request.band.noise, numerics.noiseTableHalvings);
+  const must = doublingsTo(lag, perUnit * Math.min((high - low) / LEAST_BINS, weigher.kinkResolutionHz(low, high)));
+  const fromFile = request.sides.some((side) => side.waveform.domain === 'frequency');
+  const file = fromFile ? doublingsTo(lag, (perUnit * (high - low)) / MOST_FILE_BINS) : MOST_EDGE_DOUBLINGS;
+  const learned = Math.max(extra, ...request.sides.map((side) => store.paddings(side.waveform)));
+  const doublings = Math.max(must, Math.min(must + file, learned));
+  let used = doublings + numerics.padDoublings;
   const most = MOST_SAMPLES * 2 ** numerics.padDoublings;
-  while (doublings > 0 && longestTransform(request, store, numerics, 1 / (lag * 2 ** doublings), ratios) > most) doublings--;
-  return fitted(request, store, numerics, 1 / (lag * 2 ** doublings), ratios);
+  while (used > 0 && longestTransform(request, store, numerics, 1 / (lag * 2 ** used), ratios) > most) used--;
+  const atCap = used < doublings + numerics.padDoublings;
+  return { dF: fitted(request, store, numerics, 1 / (lag * 2 ** used), ratios), doublings, mostDoublings: atCap ? doublings : must + file };
 }
 
 function longestTransform(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, dF: number, ratios: readonly number[]): number {
   return Math.max(
     ...request.sides.map((side, i) => {
-      if (side.waveform.domain === 'frequency') return side.waveform.axis[side.waveform.axis.length - 1]! / (dF * ratios[i]!);
+      if (side.waveform.domain === 'frequency') return topOf(side, request.band) / (dF * ratios[i]!);
       return 1 / (dF * ratios[i]! * gridFor(side, store, numerics, dF * ratios[i]!).dt);
     }),
   );
 }
+
+/** Rounded up to a power of two, so that masses share what was read. */
+const topOf = (side: Side, band: Band): number =>
+  Math.min(side.waveform.axis[side.waveform.axis.length - 1]!, 2 ** Math.ceil(Math.log2(band.fHighHz * side.secondsPerUnit)));
 
 /** Samples used as they stand fix their own step: the bins are moved so that their transform is a power of two long. */
 function fitted(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, dF: number, ratios: readonly number[]): number[] {
@@ -109,23 +127,6 @@ function fitted(request: PrepareRequest, store: SpectrumStore, numerics: Numeric
     return ratios.map((ratio, j) => (j === i ? own : (own / ratios[i]!) * ratio));
   }
   return ratios.map((ratio) => dF * ratio);
-}
-
-/** Is there weighted power left where a resampled grid ends below both the band and the record's own limit? */
-function topIsFull(s: Spectrum, weights: BinWeights): boolean {
-  if (!s.endsEarly) return false;
-  const topBin = (TOP_PART * s.fLast) / s.dF;
-  let [all, top] = [0, 0];
-  const { first, values } = weights;
-  if (values.length === 0) return true;
-  if (first + values.length - 1 < topBin) return false;
-  for (let j = 0; j < values.length; j++) {
-    const k = first + j;
-    const p = values[j]! * (s.zRe[k]! ** 2 + s.zIm[k]! ** 2 + s.yRe[k]! ** 2 + s.yIm[k]! ** 2);
-    all += p;
-    if (k >= topBin) top += p;
-  }
-  return top > EMPTY_TOP * all;
 }
 
 export function weightsFor(spectra: readonly Spectrum[], sides: readonly Side[], band: Band, dfHz: number, store: SpectrumStore, numerics: Numerics): BinWeights {
@@ -144,24 +145,113 @@ export function weightsFor(spectra: readonly Spectrum[], sides: readonly Side[],
   });
 }
 
+const everySecond = (values: Float64Array): Float64Array => Float64Array.from({ length: (values.length + 1) >> 1 }, (_, k) => values[2 * k]!);
+
+/** What one pass over a weighted spectrum tells. */
+interface Survey {
+  readonly all: number;
+  /** The share above TOP_PART of the grid's own end. */
+  readonly top: number;
+  /** Weights after this index hold nothing that a double could see. */
+  readonly lastUsed: number;
+}
+
+/** Σ V (|Z|² + |Y|²) over weights from … to − 1. */
+function powerBetween(s: Spectrum, { first, values }: BinWeights, from: number, to: number): number {
+  const { zRe, zIm, yRe, yIm } = s;
+  let sum = 0;
+  for (let j = from; j < to; j++) {
+    const k = first + j;
+    const a = zRe[k]!;
+    const b = zIm[k]!;
+    const c = yRe[k]!;
+    const d = yIm[k]!;
+    sum += values[j]! * (a * a + b * b + c * c + d * d);
+  }
+  return sum;
+}
+
+function survey(s: Spectrum, weights: BinWeights): Survey {
+  const n = weights.values.length;
+  const topIndex = Math.max(0, Math.min(n, Math.ceil((TOP_PART * s.fLast) / s.dF) - weights.first));
+  const top = powerBetween(s, weights, topIndex, n);
+  const all = powerBetween(s, weights, 0, topIndex) + top;
+  let lastUsed = n - 1;
+  for (let tail = 0; lastUsed > 0; lastUsed -= TRIM_BLOCK) {
+    tail += powerBetween(s, weights, Math.max(0, lastUsed - TRIM_BLOCK + 1), lastUsed + 1);
+    if (!(Math.abs(tail) < UNSEEN * Math.abs(all))) break;
+  }
+  return { all, top, lastUsed };
+}
+
+/** Does the power still hang on how the band's edges are resolved by the bins? */
+function edgeIsLoose(s: Spectrum, weights: BinWeights, all: number): boolean {
+  const sizeAt = (k: number): number => s.zRe[k]! ** 2 + s.zIm[k]! ** 2 + s.yRe[k]! ** 2 + s.yIm[k]! ** 2;
+  const doubt = weights.doubt.reduce((sum, { bin, weight }) => sum + weight * sizeAt(bin), 0);
+  return Math.abs(doubt) > SETTLED * Math.abs(all);
+}
+
+/** A frequency-domain file has no length of its own: is the power still different on every second bin? */
+function fileIsLoose(s: Spectrum, side: Side, band: Band, weights: BinWeights, store: SpectrumStore, numerics: Numerics): boolean {
+  if (side.waveform.domain !== 'frequency') return false;
+  const halved = { dF: 2 * s.dF, firstBin: Math.ceil(s.firstBin / 2), lastBin: Math.floor(s.lastBin / 2) };
+  const thin: Spectrum = { ...s, ...halved, zRe: everySecond(s.zRe), zIm: everySecond(s.zIm), yRe: everySecond(s.yRe), yIm: everySecond(s.yIm) };
+  const coarse = survey(thin, weightsFor([thin], [side], band, 2 * weights.dfHz, store, numerics)).all;
+  const fine = survey(s, weightsFor([s], [side], band, weights.dfHz, store, numerics)).all;
+  return Math.abs(2 * coarse - fine) > SETTLED * Math.abs(fine);
+}
+
+function onBins(request: PrepareRequest, plan: Spacing, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Prepared {
+  const { dF } = plan;
+  const dfHz = dF[0]! / request.sides[0]!.secondsPerUnit;
+  const spectra = request.sides.map((side, i) => sideSpectrum(side, contents?.[i] ?? lineOf(side), dF[i]!, topOf(side, request.band), store, numerics));
+  return { dF, dfHz, spectra, weights: weightsFor(spectra, request.sides, request.band, dfHz, store, numerics) };
+}
+
+function trimmed(prepared: Prepared, surveys: readonly Survey[]): Prepared {
+  const { weights } = prepared;
+  const last = Math.max(...surveys.map(({ lastUsed }) => lastUsed));
+  return last + 1 >= weights.values.length ? prepared : { ...prepared, weights: { ...weights, values: weights.values.subarray(0, last + 1) } };
+}
+
 /**
- * Puts one or two sides on common bins and weighs the band, halving a side's step until nothing is left at its upper end.
- * Shape:  spectra in the order of the sides.
+ * Puts one or two sides on common bins and weighs the band. A side's step is halved until nothing is
+ * left at its upper end, and the bins until the band's edges are resolved; a knob then goes beyond that.
+ * Shape:  spectra in the order of the sides; weights stop where nothing is left.
  * Units:  dF per side's unit, dfHz in Hz.
- * Error:  content above a resampled grid's end below 1e-13 of the weighted power, or the step at its cap.
+ * Error:  content above a resampled grid's end below 1e-13 of the weighted power; edges to 1e-10 by two orders less, far below that by the order used; or the caps.
  * Fails:  never; a band without content gives empty weights.
  * Source: settings.md rule 2.5; engine design.
  */
 export function prepare(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Prepared {
+  const unpadded = { ...numerics, padDoublings: 0 };
+  let extra = 0;
   for (;;) {
-    const dF = spacing(request, store, numerics);
-    const dfHz = dF[0]! / request.sides[0]!.secondsPerUnit;
-    const spectra = request.sides.map((side, i) => sideSpectrum(side, contents?.[i] ?? lineOf(side), dF[i]!, store, numerics));
-    const weights = weightsFor(spectra, request.sides, request.band, dfHz, store, numerics);
-    const { low, high } = contentBand(request.sides, request.band, store);
-    const full = numerics.refineStep && high > low ? spectra.findIndex((s) => topIsFull(s, weights)) : -1;
-    const side = full < 0 ? undefined : request.sides[full];
-    if (side === undefined || 2 * gridFor(side, store, numerics, dF[full]!).n > MOST_SAMPLES || store.halvings(side.waveform) > 8) return { dF, dfHz, weights, spectra };
-    store.halve(side.waveform);
+    const plan = spacing(request, store, unpadded, extra);
+    const found = onBins(request, plan, store, numerics, contents);
+    const surveys = found.spectra.map((s) => survey(s, found.weights));
+    const full = numerics.refineStep ? fullSide(request, found, surveys, store, numerics) : undefined;
+    if (full !== undefined) store.halve(full.waveform);
+    else if (numerics.refineStep && plan.doublings < plan.mostDoublings && isLoose(request, found, surveys, store, numerics)) {
+      extra = plan.doublings + 1;
+      for (const { waveform } of request.sides) if (waveform.domain === 'frequency') store.pad(waveform, extra);
+    } else if (numerics.padDoublings > 0) return onBins(request, spacing(request, store, numerics, extra), store, numerics, contents);
+    else return trimmed(found, surveys);
   }
+}
+
+const isLoose = (request: PrepareRequest, found: Prepared, surveys: readonly Survey[], store: SpectrumStore, numerics: Numerics): boolean =>
+  found.spectra.some(
+    (s, i) => edgeIsLoose(s, found.weights, surveys[i]!.all) || fileIsLoose(s, request.sides[i]!, request.band, found.weights, store, numerics),
+  );
+
+/** A side with power left where its resampled grid ends below both the band and the record's own limit, and whose step may be halved. */
+function fullSide(request: PrepareRequest, { spectra, weights, dF }: Prepared, surveys: readonly Survey[], store: SpectrumStore, numerics: Numerics): Side | undefined {
+  const { low, high } = contentBand(request.sides, request.band, store);
+  return request.sides.find((side, i) => {
+    const { all, top } = surveys[i]!;
+    if (!spectra[i]!.endsEarly || high <= low || store.halvings(side.waveform) > 8) return false;
+    const full = weights.values.length === 0 || Math.abs(top) > EMPTY_TOP * Math.abs(all);
+    return full && 2 * gridFor(side, store, numerics, dF[i]!).n <= MOST_SAMPLES;
+  });
 }

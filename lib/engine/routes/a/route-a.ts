@@ -89,7 +89,7 @@ function modePower(side: Side, band: Band, store: SpectrumStore, numerics: Numer
 /** Many lines of sight at one mass: the modes are transformed once and summed bin by bin. */
 function grams(side: Side, band: Band, sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[], store: SpectrumStore, numerics: Numerics): ResponseGram[] {
   const prepared: Prepared = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics);
-  const bank = modeBank(side, prepared.dF[0]!, store, numerics);
+  const bank = modeBank(side, prepared.dF[0]!, band.fHighHz * side.secondsPerUnit, store, numerics);
   const { weights } = prepared;
   const last = weights.first + weights.values.length - 1;
   return sights.map(({ inclinationRad, azimuthRad }) => {

@@ -54,9 +54,9 @@ function timeSpectrum(side: Side, content: Content, dF: number, store: SpectrumS
   });
 }
 
-function frequencySpectrum(side: Side, content: Content, dF: number, store: SpectrumStore, numerics: Numerics): Spectrum {
+function frequencySpectrum(side: Side, content: Content, dF: number, fTop: number, store: SpectrumStore, numerics: Numerics): Spectrum {
   const { waveform } = side;
-  const key = `${dF}|${numerics.interpolationOrder}|${contentKey(content)}`;
+  const key = `${dF}|${fTop}|${numerics.interpolationOrder}|${contentKey(content)}`;
   return store.spectrum(waveform, key, () => {
     const modes = waveform.content.kind === 'modes' ? waveform.content.modes : [];
     const weigh = (l: number, m: number) => {
@@ -64,19 +64,19 @@ function frequencySpectrum(side: Side, content: Content, dF: number, store: Spec
       const chosen = modes[content.index];
       return { re: chosen?.l === l && chosen.m === m ? 1 : 0, im: 0 };
     };
-    return store.frequency(waveform).spectrum(dF, numerics.interpolationOrder, weigh);
+    return store.frequency(waveform).spectrum(dF, numerics.interpolationOrder, fTop, weigh);
   });
 }
 
 /**
  * The spectrum of one side along its line of sight, or of one of its modes, on bins dF.
- * Shape:  as `Spectrum`.
- * Units:  the waveform's own; dF in cycles per its unit.
+ * Shape:  as `Spectrum`; a frequency-domain file is read up to fTop only.
+ * Units:  the waveform's own; dF and fTop in cycles per its unit.
  * Error:  see `spectrumOf` and the sources.
  * Fails:  never.
  * Source: settings.md rules 2.1 to 2.4.
  */
-export const sideSpectrum = (side: Side, content: Content, dF: number, store: SpectrumStore, numerics: Numerics): Spectrum =>
-  side.waveform.domain === 'frequency' ? frequencySpectrum(side, content, dF, store, numerics) : timeSpectrum(side, content, dF, store, numerics);
+export const sideSpectrum = (side: Side, content: Content, dF: number, fTop: number, store: SpectrumStore, numerics: Numerics): Spectrum =>
+  side.waveform.domain === 'frequency' ? frequencySpectrum(side, content, dF, fTop, store, numerics) : timeSpectrum(side, content, dF, store, numerics);
 
 export const lineOf = (side: Side): Content => ({ kind: 'line', inclinationRad: side.inclinationRad, azimuthRad: side.azimuthRad });

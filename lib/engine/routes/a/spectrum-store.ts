@@ -14,6 +14,8 @@ interface Shelf {
   frequency?: FrequencySource;
   /** Halvings of the step that this waveform was found to need. */
   halvings: number;
+  /** Halvings of the bin spacing that this waveform was found to need. */
+  paddings: number;
   readonly spectra: Map<string, Spectrum>;
 }
 
@@ -28,7 +30,7 @@ export class SpectrumStore {
   private shelf(waveform: Waveform): Shelf {
     const known = this.shelves.get(waveform);
     if (known) return known;
-    const made: Shelf = { halvings: 0, spectra: new Map() };
+    const made: Shelf = { halvings: 0, paddings: 0, spectra: new Map() };
     this.shelves.set(waveform, made);
     return made;
   }
@@ -49,6 +51,14 @@ export class SpectrumStore {
 
   halve(waveform: Waveform): void {
     this.shelf(waveform).halvings++;
+  }
+
+  paddings(waveform: Waveform): number {
+    return this.shelf(waveform).paddings;
+  }
+
+  pad(waveform: Waveform, paddings: number): void {
+    this.shelf(waveform).paddings = paddings;
   }
 
   spectrum(waveform: Waveform, key: string, make: () => Spectrum): Spectrum {
