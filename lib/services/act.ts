@@ -6,7 +6,7 @@ import type { AccountAction, SubmissionAction } from '@/lib/policy/actions';
 import type { Actor } from '@/lib/policy/actor';
 import type { SubmissionFacts } from '@/lib/policy/facts';
 import { may, mayGenerally, type Grant, type SubmissionGrant } from '@/lib/policy/grant';
-import { AppFailure, type Outcome } from './app-error';
+import { AppFailure, NOT_FOUND, type Outcome } from './app-error';
 import { recordAnswerOnce } from './once';
 
 /** What a verb needs at hand: a transaction, the right it was given, and the facts behind it. */
@@ -75,7 +75,7 @@ export async function readSubmission<A extends SubmissionAction, T>(
 ): Promise<Outcome<T>> {
   const facts = await findSubmissionFacts(db, actor, submissionId);
   const grant = may(action, actor, facts);
-  if (!grant.ok || facts === null) return grant.ok ? absent() : grant;
+  if (!grant.ok || facts === null) return { ok: false, error: NOT_FOUND };
   return work({ reader: db, actor, grant: grant.value, facts });
 }
 

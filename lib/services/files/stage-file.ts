@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
 import { Transform, type Readable } from 'node:stream';
+import { pipeline } from 'node:stream/promises';
 import { database } from '@/db/client';
 import { findStorageKey } from '@/db/reads/files/stored-file';
 import type { UploadedFile } from '@/db/writes/files/store-file';
@@ -41,8 +42,10 @@ export async function stageFile({ name, stream }: Incoming): Promise<Outcome<Upl
   const storageKey = `uploads/${randomUUID()}`;
   try {
     const cap = capped();
-    stream.on('error', (error) => cap.destroy(error));
-    const stored = await fileStore().put(storageKey, stream.pipe(cap));
+    // Not pipe(): a sender may be gone before we listen, and a stream that broke before says so only here.
+    const passing = pipeline(stream, cap).catch((error: unknown) => void cap.destroy(error instanceof Error ? error : new Error(String(error))));
+    const stored = await fileStore().put(storageKey, cap);
+    await passing;
     return ok(await sharing({ name, storageKey, ...stored }));
   } catch (error) {
     stream.resume();
