@@ -24,14 +24,20 @@ export interface Inputs {
   readonly files: HashedFiles;
 }
 
+/** Half a gibibyte of samples in one sheet. */
+const mostNumbers = 2 ** 26;
+
 /** Every file of the sheet, one after another so that memory holds one table at a time while it grows. */
 export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: (doing: string) => void): Promise<Result<Inputs, Problem[]>> {
   const problems: Problem[] = [];
   const waveforms = new Map<string, Found<Waveform>>();
   const noise = new Map<string, Found<NoiseCurve>>();
+  let numbers = 0;
   for (const declaration of sheet.waveforms.values()) {
     onFile(`reading ${declaration.name}`);
     const read = await readWaveform(declaration, files.open);
+    if (read.ok) numbers += numbersIn(read.value.waveform);
+    if (numbers > mostNumbers) return err([...problems, tooLarge]);
     if (read.ok) waveforms.set(declaration.name, { input: read.value.waveform, findings: [...sheetFindings(declaration), ...read.value.findings] });
     else problems.push(...read.error);
   }
@@ -42,6 +48,14 @@ export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: 
     else problems.push(...read.error);
   }
   return problems.length > 0 ? err(once(problems)) : ok({ waveforms, noise, files });
+}
+
+const tooLarge: Problem = { code: 'formats/sheet-too-large', where: '/waveforms', saw: `more than ${mostNumbers} numbers in all waveforms together`, expected: `at most ${mostNumbers}`, hint: 'Thin the samples, or make several sheets.' };
+
+function numbersIn(waveform: Waveform | null): number {
+  if (waveform === null) return 0;
+  const { axis, content } = waveform;
+  return axis.length * (content.kind === 'modes' ? 1 + 2 * content.modes.length : 3);
 }
 
 async function readCurve(declaration: NoiseDeclaration, files: HashedFiles): Promise<Result<Found<NoiseCurve>, Problem[]>> {

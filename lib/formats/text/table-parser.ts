@@ -2,6 +2,7 @@ import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import { diagnoseLine, quote, type Separator } from './diagnose-line';
 import { NumberReader } from './number-reader';
+import { endOfLine, isComment, join, newline, skipBlanks, skipField } from './scan-bytes';
 import { LineNumbers, type NotFinite, type NumberTable } from './table';
 
 export interface TableLimits {
@@ -16,7 +17,6 @@ export const tableLimits: TableLimits = { bytes: 512 * 2 ** 20, rows: 2 ** 21, c
 
 const reportedProblems = 10;
 const reportedNotFinite = 5;
-const newline = 10;
 const blank = 0;
 const comma = 1;
 const semicolon = 2;
@@ -233,34 +233,4 @@ export class TableParser {
     this.problems.push(problem);
     if (this.problems.length >= reportedProblems) this.stopped = true;
   }
-}
-
-function join(a: Uint8Array, b: Uint8Array): Uint8Array {
-  const both = new Uint8Array(a.length + b.length);
-  both.set(a);
-  both.set(b, a.length);
-  return both;
-}
-
-function skipBlanks(bytes: Uint8Array, from: number): number {
-  let i = from;
-  while (bytes[i] === 32 || bytes[i] === 9) i++;
-  return i;
-}
-
-function skipField(bytes: Uint8Array, from: number): number {
-  let i = from;
-  for (let c = bytes[i]!; c > 32 && c !== 44 && c !== 59; c = bytes[i]!) i++;
-  return i;
-}
-
-const isComment = (c: number): boolean => c === 35 || c === 37 || c === 33;
-
-function endOfLine(bytes: Uint8Array, from: number): number {
-  const i = skipBlanks(bytes, from);
-  const c = bytes[i]!;
-  if (c === newline) return i + 1;
-  if (c === 13 && bytes[i + 1] === newline) return i + 2;
-  if (i > from && isComment(c)) return bytes.indexOf(newline, i) + 1;
-  return -1;
 }
