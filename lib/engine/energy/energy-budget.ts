@@ -38,17 +38,22 @@ function byEll(modes: readonly ModeEnergy[]): { l: number; energy: number }[] {
   return [...sums].map(([l, energy]) => ({ l, energy })).sort((a, b) => a.l - b.l);
 }
 
-/** E09: the modes above the last ℓ, as the tail of a geometric series in E_ℓ; one-sided, so half of it ± half/√3 (here uncorrected). */
+/**
+ * E09: the modes above the last ℓ, as the tail of a geometric series in E_ℓ. Symmetry can silence
+ * every other ℓ, so the ratio is taken over two steps where the file has three. One-sided: half of it
+ * ± half/√3; we leave the value as it is and give the whole over √3.
+ */
 function modesLine(modes: readonly ModeEnergy[], norm: number): BudgetLine {
   const base = { component: 'Modes left out', id: 'E09', group: 'coverage' } as const;
   const sums = byEll(modes);
-  const last = sums.at(-1);
-  const before = sums.at(-2);
-  if (!last || !before || !(before.energy > 0)) return { ...base, u: null, note: 'One ℓ alone gives no trend to continue.' };
-  const ratio = last.energy / before.energy;
-  if (!(ratio < 1)) return { ...base, u: null, note: `The energy does not fall from ℓ = ${before.l} to ${last.l}: no series to continue.` };
-  const rest = (last.energy * ratio) / (1 - ratio);
-  return { ...base, u: rest / ROOT3 / norm, note: `E falls by a factor ${Number(ratio.toPrecision(2))} from ℓ = ${before.l} to ${last.l}; the rest of that series above ℓ = ${last.l}, one-sided.` };
+  const [last, before, earlier] = [sums.at(-1), sums.at(-2), sums.at(-3)];
+  if (!last || !before) return { ...base, u: null, note: 'One ℓ alone gives no trend to continue.' };
+  const from = earlier ?? before;
+  const ratio = last.energy / from.energy;
+  if (!(ratio < 1)) return { ...base, u: null, note: `The energy does not fall from ℓ = ${from.l} to ${last.l}: no series to continue.` };
+  const repeated = earlier ? before.energy + last.energy : last.energy;
+  const rest = (repeated * ratio) / (1 - ratio);
+  return { ...base, u: rest / ROOT3 / norm, note: `E falls to ${Number((100 * ratio).toPrecision(2))} % from ℓ = ${from.l} to ${last.l}; the rest of that series above ℓ = ${last.l}, one-sided.` };
 }
 
 /**
