@@ -34,7 +34,7 @@ const openPool = (limits: ThreadLimits): Piscina<SheetTask, Awaited<ReturnType<C
     maxThreads: limits.threads,
     // An idle thread keeps spectra of its last sheet; let them go.
     idleTimeout: 20_000,
-    resourceLimits: { maxOldGenerationSizeMb: limits.heapMb, maxYoungGenerationSizeMb: 64 },
+    resourceLimits: { maxOldGenerationSizeMb: limits.heapMb, maxYoungGenerationSizeMb: Math.min(64, limits.heapMb / 8) },
   });
 
 export function openSheetThreads(limits: ThreadLimits = houseLimits): SheetThreads {

@@ -5,7 +5,7 @@ import type { SheetJob } from '@/lib/worker/compute';
 import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
 
 const folder = join(process.cwd(), 'content', 'specimens', 'radiated-energy');
-const sheet = JSON.parse(readFileSync(join(folder, 'claim.json'), 'utf8')) as { waveforms: object; claims: object[] };
+const sheet = JSON.parse(readFileSync(join(folder, 'claim.json'), 'utf8')) as unknown;
 const job: SheetJob = { sheet, files: [{ name: 'modes.txt', path: join(folder, 'modes.txt') }], withFigures: true };
 const quiet = { onProgress: () => undefined, signal: new AbortController().signal };
 
@@ -47,10 +47,9 @@ describe('a thread with narrow limits', () => {
     expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/time-limit']);
   });
   it('ends a run that fills its heap, and leaves the process alive', async () => {
-    const narrow = openSheetThreads({ ...houseLimits, heapMb: 64 });
-    // Many claims, each kept as objects: what a hostile sheet can grow on the heap.
-    const claims = Array.from({ length: 150_000 }, (_, i) => ({ ...sheet.claims[0], id: `C${i}`, note: `${i}`.repeat(20) }));
-    const run = await narrow.run({ ...job, sheet: { ...sheet, claims } }, quiet);
+    // The pipeline itself does not fit: the same end as a sheet that grows too large, without growing one.
+    const narrow = openSheetThreads({ ...houseLimits, heapMb: 8 });
+    const run = await narrow.run(job, quiet);
     await narrow.close();
     expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/memory']);
   });

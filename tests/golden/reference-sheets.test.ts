@@ -1,0 +1,34 @@
+import { existsSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
+import { beforeAll, describe, expect, it } from 'vitest';
+import type { ResultClaim } from '@/lib/pipeline/result';
+import { runFolder } from './run-folder';
+
+/** Sheets with expected figures from closed forms and a plain numpy reading of the definitions; they lie outside the project. */
+const sheets = join('..', 'shared', 'reference', 'sheets');
+
+interface Expected {
+  readonly points: readonly { readonly value: number; readonly tolerance: number; readonly kind: 'rel' | 'abs'; readonly source: string }[];
+}
+
+describe.each(['run1-chirps', 'run2-gaussians'])('the reference sheet %s', (name) => {
+  const folder = join(sheets, name);
+  const present = existsSync(join(folder, 'expected.json'));
+  const expected = present
+    ? (JSON.parse(readFileSync(join(folder, 'expected.json'), 'utf8')) as { claims: Record<string, Expected> }).claims
+    : {};
+  let claims: ReadonlyMap<string, ResultClaim> = new Map();
+
+  it.runIf(present)(`needs ${folder}, which lies outside the project`, () => expect(Object.keys(expected).length).toBeGreaterThan(0));
+
+  describe.runIf(present)('figure by figure', () => {
+    beforeAll(async () => void (claims = await runFolder(folder)), 300_000);
+    it.each(Object.entries(expected))('gives %s as expected, and agrees', (id, { points }) => {
+      const claim = claims.get(id);
+      points.forEach(({ value, tolerance, kind }, i) =>
+        expect(claim?.points[i]?.value).toAgreeWith(value, kind === 'rel' ? { relative: tolerance } : tolerance),
+      );
+      expect(claim?.verdict).toBe('agrees');
+    });
+  });
+});
