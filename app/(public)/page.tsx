@@ -1,20 +1,15 @@
 import type { Metadata } from 'next';
 import { LinkButton } from '../_ui/primitives/link-button';
-import { Perforation } from '../_ui/primitives/perforation';
+import { loadActor, orNotFound } from '@/lib/http/page-guard';
+import { listRecords } from '@/lib/services/records/list-records';
 import { HowARecordComesToBe, WhatVerifiedMeans } from './how-it-comes';
+import { NewestRecord, NewestRecords } from './newest-records';
 
 export const metadata: Metadata = { title: { absolute: 'Counterfoil: every number has two halves' } };
 
-/** Stands where the newest record will, until there is one. */
-const EmptyTicket = () => (
-  <div aria-hidden className="meets grid h-48 grid-cols-[43%_24px_1fr] border border-dashed border-control">
-    <span className="bg-claimed-side" />
-    <Perforation lies="never" />
-    <span className="bg-sheet" />
-  </div>
-);
-
-export default function Landing() {
+export default async function Landing() {
+  const actor = await loadActor();
+  const rows = orNotFound(await listRecords(actor));
   return (
     <>
       <div className="wrap py-8 stack:py-14">
@@ -30,9 +25,10 @@ export default function Landing() {
             </div>
           </div>
         </div>
-        <EmptyTicket />
+        <NewestRecord actor={actor} row={rows.find((row) => row.standing === 'entered')} />
       </div>
       <HowARecordComesToBe />
+      <NewestRecords rows={rows.slice(0, 5)} total={rows.length} />
       <WhatVerifiedMeans />
     </>
   );

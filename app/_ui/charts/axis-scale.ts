@@ -40,7 +40,8 @@ const logScale: AxisScale = {
 /** Ticks keep the decimals that tell them apart. */
 function linearLabels(places: readonly number[]): string[] {
   const step = places.length > 1 ? Math.abs((places[1] ?? 0) - (places[0] ?? 0)) : Math.abs(places[0] ?? 1) || 1;
-  const decimals = decimalsFor(Number(step.toPrecision(6)), 1) + (Math.abs(step / 10 ** Math.floor(Math.log10(step) + 1e-9) - 2.5) < 1e-6 ? 1 : 0);
+  const lead = step / 10 ** Math.floor(Math.log10(step) + 1e-9);
+  const decimals = decimalsFor(Number(step.toPrecision(6)), Math.abs(lead - 2.5) < 1e-6 ? 2 : 1);
   return places.map((place) => formatNumber(place, { decimals, plain: true }));
 }
 

@@ -45,7 +45,7 @@ function PanelMount({ figure, panel, index, onIndex, still }: PanelMountProps) {
       const follow = (u: uPlot) => {
         if (typeof u.cursor.idx === 'number') report.current(u.cursor.idx);
       };
-      plot.current = new UPlot({ ...spec.options, width, hooks: { ready: [restore], setSize: [restore], setCursor: [follow] } }, spec.data, element);
+      plot.current = new UPlot({ ...spec.options, axes: inTypeOf(element, spec.options.axes), width, hooks: { ready: [restore], setSize: [restore], setCursor: [follow] } }, spec.data, element);
       setLive(true);
     };
     const observer = new ResizeObserver(([entry]) => {
@@ -72,6 +72,12 @@ function PanelMount({ figure, panel, index, onIndex, still }: PanelMountProps) {
     </div>
   );
 }
+
+/** A canvas does not inherit the page's typeface: it is told. */
+const inTypeOf = (element: HTMLElement, axes: uPlot.Axis[] = []): uPlot.Axis[] => {
+  const font = `12px ${getComputedStyle(element).fontFamily}`;
+  return axes.map((axis) => ({ ...axis, font }));
+};
 
 function showAt(plot: uPlot, data: uPlot.AlignedData, index: number) {
   const x = data[0][index];

@@ -17,7 +17,7 @@ const named = (of: SheetWords['of']): string => {
   return names.length === 0 ? '' : ` of ${names.length === 1 ? names[0] : `${names.slice(0, -1).join(', ')} and ${names.at(-1)}`}`;
 };
 
-function contextOf(claim: ResultClaim, noise: string | null | undefined): string | null {
+function contextOf(claim: Omit<ResultClaim, 'candidates'>, noise: string | null | undefined): string | null {
   const setting = (name: string) => claim.settings.find((s) => s.name === name);
   const low = setting('fLowHz');
   const distance = setting('distanceMpc');
@@ -30,7 +30,7 @@ function contextOf(claim: ResultClaim, noise: string | null | undefined): string
 }
 
 /** The heading of a claim that has been run; `sheet` adds what only the claim sheet knows. */
-export function headingOf(claim: ResultClaim, quantity: QuantityWords | null, sheet: SheetWords = {}): ClaimHeading {
+export function headingOf(claim: Omit<ResultClaim, 'candidates'>, quantity: QuantityWords | null, sheet: SheetWords = {}): ClaimHeading {
   return {
     id: claim.id,
     quantity: claim.quantity,

@@ -27,7 +27,8 @@ interface PointCellsProps {
   readonly slots: RecordSlots;
 }
 
-const toNumber = (printed: string): number => Number(printed.replace(/\(.*$/, '').replace('−', '-').replaceAll(',', ''));
+/** The number in what the author printed: `36.3(2)`, `> 0.999`, `0.5 ± 0.1`. */
+const toNumber = (printed: string): number => Number((/[-+−]?(?:\d[\d,]*\.?\d*|\.\d+)/.exec(printed)?.[0] ?? '').replace('−', '-').replaceAll(',', '') + (/[eE][-+]?\d+/.exec(printed)?.[0] ?? ''));
 
 /** Beyond these decimals a plain number is harder to read than its power of ten. */
 const mostColumnDecimals = 8;
@@ -98,7 +99,7 @@ function Place({ text }: { readonly text: string }) {
 
 function Tolerance({ claimed, ln, plain, unit }: { readonly claimed: ClaimedPoint; readonly ln: boolean; readonly plain: boolean; readonly unit: string }) {
   if (/^[<>≤≥]/.test(claimed.printed)) return <span className="whitespace-normal">a bound has none</span>;
-  if (claimed.tolerance === null) return <Unknown>not set</Unknown>;
+  if (claimed.tolerance === null) return <span className="whitespace-normal">natural</span>;
   if (ln) return <NumberCell value={claimed.tolerance * 100} significant={2} unit="%" />;
   return <NumberCell value={claimed.tolerance} plain={plain && claimed.tolerance >= 1e-7} unit={unit} />;
 }

@@ -24,8 +24,8 @@ export function decimalsForReading(tolerance: number | null, printedDecimals: nu
 
 /** Digits after the point of a number as printed by its author: `0.9984(3)` → 4. */
 export function printedDecimals(printed: string): number {
-  const match = /^[^\d]*[\d,]*(?:\.(\d*))?/.exec(printed.trim());
-  const shift = /[eE×x]\s*(?:10\^?)?\s*([+-−]?\d+)/.exec(printed);
+  const match = /^[^\d.]*[\d,]*(?:\.(\d*))?/.exec(printed.trim());
+  const shift = /[eE×x]\s*(?:10\^?)?\s*([+\-−]?\d+)/.exec(printed);
   const decimals = (match?.[1] ?? '').length;
   return shift ? Math.max(0, decimals - Number((shift[1] ?? '0').replace('−', '-'))) : decimals;
 }

@@ -37,9 +37,9 @@ export function NumberCell({ value, unit, unknown, ...style }: NumberCellProps) 
 
 /** A number exactly as its author printed it: no digit is added or taken; `(3)` in the second ink. */
 export function PrintedNumber({ printed, unit }: { readonly printed: string; readonly unit?: string }) {
-  const match = /^([<>≥≤]\s*)?([-−+]?)([\d,]+)(\.\d*)?(\(\d+\))?(?:[eE]([-−+]?\d+))?$/.exec(printed.trim());
+  const match = /^([<>≥≤]\s*)?([-−+]?)([\d,]+)(\.\d*)?(\(\d+\))?(?:[eE]([-−+]?\d+))?(\s*±\s*\S+)?$/.exec(printed.trim());
   if (!match) return <span className="whitespace-nowrap">{printed}{unit ? <> <UnitLabel unit={unit} /></> : null}</span>;
-  const [, bound = '', sign = '', integer = '', fraction = '', bracket, power] = match;
+  const [, bound = '', sign = '', integer = '', fraction = '', bracket, power, bar] = match;
   return (
     <>
       <span className="whitespace-nowrap">
@@ -47,6 +47,7 @@ export function PrintedNumber({ printed, unit }: { readonly printed: string; rea
         {fraction}
         {bracket && <span className="text-ink-2">{bracket}</span>}
         {power !== undefined && <> × 10<sup>{String(Number(power.replace('−', '-'))).replace('-', '−')}</sup></>}
+        {bar && <span className="text-ink-2">{bar}</span>}
       </span>
       {unit ? <> <UnitLabel unit={unit} /></> : null}
     </>

@@ -52,7 +52,7 @@ export const Skeleton = ({ width, tall, className }: { readonly width: string; r
 export function LoadingList({ what, rows = 4 }: { readonly what: string; readonly rows?: number }) {
   const widths = ['34ch', '28ch', '40ch', '24ch'];
   return (
-    <div aria-busy="true">
+    <div aria-busy="true" className="min-w-0 overflow-hidden">
       <span role="status" className="sr-only">Loading {what}</span>
       {Array.from({ length: rows }, (_, i) => (
         <div key={i} className="flex min-h-12 items-center gap-6 shadow-[inset_0_-1px_var(--hair)]">

@@ -1,0 +1,14 @@
+import { quantities } from '@/lib/engine/quantities/registry';
+
+export const verdictChoices = [
+  { value: 'agrees', label: 'agrees' },
+  { value: 'differs', label: 'differs' },
+  { value: 'unsettled', label: 'is unsettled' },
+  { value: 'not-computable', label: 'is not computable' },
+  { value: 'routes-disagree', label: 'has routes that disagree' },
+] as const;
+
+export const verdictWord = (verdict: string): string => verdictChoices.find((choice) => choice.value === verdict)?.label ?? verdict;
+
+/** A quantity of an older or newer engine is still named, by its id. */
+export const quantityWord = (id: string): string => quantities.get(id)?.title ?? id.replaceAll('-', ' ').replace(/^./, (c) => c.toUpperCase());

@@ -1,0 +1,45 @@
+import type { Route } from 'next';
+import Link from 'next/link';
+import { VerdictStrip } from '@/app/_ui/verdict/verdict-chip';
+import type { VerdictState } from '@/app/_ui/verdict/verdict-words';
+import { formatDay } from '@/app/views/dates';
+import { RECORD_STANDING_WORDS } from '@/lib/badges/standing';
+import { isVerdict } from '@/lib/services/records/register-words';
+import type { RegisterRow } from '@/lib/services/records/record-view';
+import { quantityWord } from './filter-words';
+
+const asState = (verdict: string): VerdictState => (isVerdict(verdict) ? verdict : 'waiting');
+
+/** Rows of the register; under 640 px each row stacks and keeps its roles. */
+export function RegisterTable({ rows, caption = 'Records, the newest entry first' }: { readonly rows: readonly RegisterRow[]; readonly caption?: string }) {
+  return (
+    <table role="table" className="register w-full text-cell">
+      <caption className="sr-only">{caption}</caption>
+      <thead role="rowgroup" className="max-sm:sr-only">
+        <tr role="row" className="text-left text-small text-ink-2 [&>*]:pb-2 [&>*]:font-semibold">
+          <th role="columnheader" scope="col">Record</th>
+          <th role="columnheader" scope="col">Claims</th>
+          <th role="columnheader" scope="col">Standing</th>
+          <th role="columnheader" scope="col" className="sm:text-right">Entered</th>
+        </tr>
+      </thead>
+      <tbody role="rowgroup">{rows.map((row) => <Row key={row.id} row={row} />)}</tbody>
+    </table>
+  );
+}
+
+function Row({ row }: { readonly row: RegisterRow }) {
+  const standing = row.standing === 'entered' ? `Level ${row.level}` : `${RECORD_STANDING_WORDS[row.standing]}, level ${row.level}`;
+  return (
+    <tr role="row" className="align-top shadow-[inset_0_1px_var(--hair)] max-sm:grid max-sm:gap-1 max-sm:py-3 [&>*]:py-3 max-sm:[&>*]:py-0">
+      <th role="rowheader" scope="row" className="pr-6 text-left font-normal">
+        <Link href={`/records/${row.id}` as Route} className={`font-serif text-[17px]/[24px] font-semibold text-ink no-underline hover:underline ${row.standing === 'struck' ? 'line-through' : ''}`}>{row.title}</Link>
+        <span className="block text-small text-ink-2">{row.authors.join(', ')}</span>
+        <span className="block text-small text-ink-2">{row.quantities.map(quantityWord).join(', ')}</span>
+      </th>
+      <td role="cell" className="pr-6"><VerdictStrip verdicts={row.verdicts.map((verdict, i) => ({ id: `claim ${i + 1}`, verdict: asState(verdict) }))} /></td>
+      <td role="cell" className="pr-6 whitespace-nowrap">{standing}</td>
+      <td role="cell" className="whitespace-nowrap sm:text-right">{formatDay(row.enteredOn)}<span className="block text-small text-ink-2">revision {row.revision}</span></td>
+    </tr>
+  );
+}

@@ -1,0 +1,75 @@
+import type { DecisionView, RecordView, ReportView } from '@/app/_ui/claim/record-view';
+import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
+import type { RecordDocument } from '@/lib/badges/record';
+import { RECOMMENDATION_WORDS, REPORT_QUESTIONS } from '@/lib/reviews/report';
+import type { RecordView as PublishedRecord } from '@/lib/services/records/record-view';
+import type { ReportView as HandedIn } from '@/lib/services/reviews/report-view';
+import type { LodgedView } from '@/lib/services/submissions/submission-view';
+import { formatDay } from './dates';
+import { headingsOfResult } from './sheet-headings';
+
+/** What was signed, in the shape of a result: the page shows the record's own numbers and no others. */
+const resultOf = (document: RecordDocument): ResultDocument => ({
+  format: 'counterfoil-result/1',
+  engine: document.engine,
+  title: document.title,
+  files: document.files,
+  claims: document.claims.map(({ covered: _covered, ...claim }) => ({ ...claim, candidates: [] })),
+});
+
+/** A report as one text: each question with its answer. */
+export const reportText = (report: Pick<HandedIn, 'answers'>): string =>
+  REPORT_QUESTIONS.flatMap(({ id, text }) => (report.answers[id].trim() === '' ? [] : [`**${text}**\n\n${report.answers[id]}`])).join('\n\n');
+
+export const reportAsView = (report: HandedIn): ReportView => ({
+  who: report.by,
+  round: report.round,
+  on: formatDay(report.when.precision === 'day' ? report.when.on : report.when.at),
+  recommendation: `${RECOMMENDATION_WORDS[report.recommendation]} · confidence ${report.confidence} of 5`,
+  text: reportText(report),
+});
+
+const decisionOf = ({ document, decision }: PublishedRecord): DecisionView => ({
+  title: `Entered at level ${document.decision.level}`,
+  by: document.decision.by,
+  on: formatDay(document.decision.on),
+  level: document.decision.level,
+  coveredClaims: document.claims.filter((claim) => claim.covered).map((claim) => claim.id),
+  remarks: document.decision.remarks,
+  note: decision.publicSentence || null,
+});
+
+const historyOf = (record: PublishedRecord, lodged: LodgedView | null): RecordView['history'] => [
+  ...(lodged?.revisions ?? []).map((revision) => ({ on: formatDay(revision.lodgedAt), text: `Lodged, revision ${revision.number}` })),
+  { on: formatDay(record.document.enteredAt), text: `Entered by ${record.document.decision.by}` },
+  ...(record.standing === 'entered' ? [] : [{ on: formatDay(record.standingSince), text: record.standingReason || record.standing }]),
+];
+
+/** A published record. `lodged` adds the statement and the names in the sheet, `figures` the curves; the numbers are the signed ones. */
+export function recordAsView(record: PublishedRecord, lodged: LodgedView | null, figures: FiguresByClaim): RecordView {
+  const { document } = record;
+  const digest = document.resultDigest;
+  const affiliationOf = (name: string) => lodged?.authors.find((author) => author.name === name)?.affiliation ?? null;
+  return {
+    mode: 'public',
+    id: record.id,
+    title: document.title,
+    people: document.authors.map((name) => ({ name, affiliation: affiliationOf(name) })),
+    state: `Entered ${formatDay(document.enteredAt)}`,
+    standing: record.standing,
+    revision: document.revision,
+    revisions: [],
+    engine: document.engine,
+    facts: [`revision ${document.revision}`, `lapses ${formatDay(document.lapsesAt)} unless rerun`],
+    claims: headingsOfResult(document.claims, lodged?.revision.sheet.claims ?? []),
+    run: { state: 'done', finishedOn: lodged?.run?.state === 'measured' ? formatDay(lodged.run.finishedAt) : null, resultSha256: digest },
+    result: resultOf(document),
+    figures,
+    logs: {},
+    statement: lodged?.revision.statement || null,
+    decision: decisionOf(record),
+    reports: record.reports.map(reportAsView),
+    cautions: [...document.cautions.map((caution) => caution.text), record.badge.rulesSentence],
+    history: historyOf(record, lodged),
+  };
+}

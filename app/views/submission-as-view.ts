@@ -1,0 +1,56 @@
+import type { RecordView, ReportView, RunView as RunOnScreen } from '@/app/_ui/claim/record-view';
+import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
+import { formatProblem } from '@/lib/kernel/problem';
+import type { DraftView, LodgedView, RunView } from '@/lib/services/submissions/submission-view';
+import { formatDay } from './dates';
+import { headingsOfResult, headingsOfSheet } from './sheet-headings';
+
+/** How a run stands, in the component's words. */
+export function runAsView(run: RunView | null): RunOnScreen {
+  if (!run) return { state: 'none' };
+  switch (run.state) {
+    case 'queued': return { state: 'waiting', ahead: null };
+    case 'running': return { state: 'running', steps: [{ label: run.doing || 'Under way', fraction: run.fraction }] };
+    case 'stopped': return { state: 'stopped', reason: run.because };
+    case 'refused': return { state: 'stopped', reason: run.problems.map(formatProblem).join(' ') || 'The sheet or a file could not be read.' };
+    case 'measured': return { state: 'done', finishedOn: formatDay(run.finishedAt), resultSha256: run.resultDigest };
+  }
+}
+
+interface Extra {
+  readonly figures?: FiguresByClaim;
+  readonly reports?: readonly ReportView[];
+  readonly cautions?: readonly string[];
+}
+
+const measured = (run: RunView | null): ResultDocument | null => (run?.state === 'measured' ? run.result : null);
+
+/** A draft with its latest check, or a lodged revision with its official run. */
+export function submissionAsView(submission: DraftView | LodgedView, extra: Extra = {}): RecordView {
+  const run = submission.kind === 'draft' ? (submission.check?.run ?? null) : submission.run;
+  const result = measured(run);
+  const { revision } = submission;
+  const revisions = submission.kind === 'draft' ? [] : submission.revisions;
+  return {
+    mode: submission.kind,
+    id: submission.id,
+    title: revision.title || 'Untitled',
+    people: submission.authors.map(({ name, affiliation }) => ({ name, affiliation })),
+    state: submission.stateWords,
+    standing: null,
+    revision: revision.number,
+    revisions: revisions.map((r) => ({ label: `Revision ${r.number}`, href: `?revision=${r.number}`, current: r.number === revision.number })),
+    engine: run?.engine ?? null,
+    facts: [`revision ${revision.number}`, ...(revision.lodgedAt ? [`lodged ${formatDay(revision.lodgedAt)}`] : [])],
+    claims: result ? headingsOfResult(result.claims, revision.sheet.claims) : headingsOfSheet(revision.sheet.claims),
+    run: runAsView(run),
+    result,
+    figures: extra.figures ?? {},
+    logs: {},
+    statement: revision.statement || null,
+    decision: null,
+    reports: extra.reports ?? [],
+    cautions: extra.cautions ?? [],
+    history: revisions.map((r) => ({ on: formatDay(r.lodgedAt), text: `Lodged, revision ${r.number}` })),
+  };
+}
