@@ -33,6 +33,7 @@ export interface FluxStore {
 /** A floor that strain and news never use. */
 const NO_FLOOR = 1;
 
+/** The last fluxes of each kind: a sweep over the start, or U beside the value, asks for the same ones again. */
 export function fluxStore(): FluxStore {
   const keep = (numerics: SampleNumerics) => {
     let last: { record: RadiationRecord; floor: number | null; fluxes: Fluxes } | null = null;
@@ -84,7 +85,14 @@ function roundingOf(record: RadiationRecord, fluxes: Fluxes, startM: number, dig
 /** Relative size below which no computation in double precision is trusted (engine design). */
 const LEAST = 1e-13;
 
-/** How far route A moves when each of its knobs is turned, as standard uncertainties. */
+/**
+ * How far route A moves when each of its knobs is turned, as standard uncertainties (half-widths over √3).
+ * Shape:  one number a component.
+ * Units:  fractions of M.
+ * Error:  the stencil's is that of the shorter one, so it errs on the large side.
+ * Fails:  never.
+ * Source: settings.md rule 12; domain reference section 5.
+ */
 export function computationUncertainty(record: RadiationRecord, settings: EnergySettings, store: FluxStore, digits: number | null): ComputationUncertainty {
   const { floor } = settings;
   const fine = store.fine(record, floor);

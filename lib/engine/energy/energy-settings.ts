@@ -25,7 +25,14 @@ export function binaryOfClaim(declared: DeclaredSettings, waveform: Waveform): B
   return { massRatio, chi1z: declared.chi1z ?? waveform.binary.chi1z ?? 0, chi2z: declared.chi2z ?? waveform.binary.chi2z ?? 0 };
 }
 
-/** Settings of one point; the record is needed where a default is read from the data. */
+/**
+ * Settings of one point, defaults filled in; the record is needed where a default is read from the data.
+ * Shape:  one value a setting.
+ * Units:  startM in M, floor in rad/M.
+ * Error:  none.
+ * Fails:  never; a floor that cannot be read is null.
+ * Source: settings.md section 1.
+ */
 export function energySettings(declared: DeclaredSettings, waveform: Waveform, record: RadiationRecord): EnergySettings {
   const startM = declared.startM ?? waveform.junkEndM ?? record.axis[0]!;
   return {
@@ -67,7 +74,14 @@ function rowsOf(used: EnergySettings, waveform: Waveform, record: RadiationRecor
   return rows;
 }
 
-/** The settings as a reader sees them, and the names of house defaults that could change the value. */
+/**
+ * The settings as a reader sees them, and the names of house defaults that could change the value.
+ * Shape:  one row a setting; swept ones are marked.
+ * Units:  beside each value.
+ * Error:  none.
+ * Fails:  never.
+ * Source: settings.md section 1 (the mark ●).
+ */
 export function settingsUsed(used: EnergySettings, declared: DeclaredSettings, swept: SettingName | null, waveform: Waveform, record: RadiationRecord): { settings: UsedSetting[]; assumed: string[] } {
   const rows = rowsOf(used, waveform, record);
   const standing = (name: SettingName): UsedSetting['standing'] => (name === swept ? 'swept' : declared[name] === undefined ? 'assumed' : 'declared');

@@ -67,7 +67,14 @@ const GAUSS: Readonly<Record<number, readonly (readonly [x: number, w: number])[
   8: [[0.06943184420297371, 0.17392742256872693], [0.33000947820757187, 0.32607257743127307], [0.6699905217924281, 0.32607257743127307], [0.9305681557970263, 0.17392742256872693]],
 };
 
-/** Weight that each sample receives in ∫_{start}^{last}, for the local polynomial through `points` samples around each interval. */
+/**
+ * Weight that each sample receives in ∫_{start}^{last}, for the local polynomial through so many samples around each interval.
+ * Shape:  one weight a sample; zero everywhere for a start after the record.
+ * Units:  those of the axis.
+ * Error:  order `wanted` in the step; exact for polynomials below that degree.
+ * Fails:  never for two samples or more.
+ * Source: Gauss rules on Fornberg's interpolation; our assembly.
+ */
 export function quadratureWeights(axis: Float64Array, start: number, wanted: 4 | 6 | 8): Float64Array {
   const n = axis.length;
   const weights = new Float64Array(n);

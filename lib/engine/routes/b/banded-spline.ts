@@ -104,7 +104,14 @@ function eliminate(factors: Float64Array, n: number, half: number): void {
   }
 }
 
-/** The spline through `samples` at the sites of `basis`. */
+/**
+ * The spline through samples at the sites of a basis.
+ * Shape:  one sample a site.
+ * Units:  those of the samples.
+ * Error:  (ωΔt)⁸·8e-7 of the amplitude at the local step Δt.
+ * Fails:  never.
+ * Source: as splineBasis.
+ */
 export function fitSpline(basis: SplineBasis, samples: Float64Array): Spline {
   const { n, half, factors } = basis;
   const width = 2 * half + 1;
@@ -122,7 +129,14 @@ export function fitSpline(basis: SplineBasis, samples: Float64Array): Spline {
   return { basis, coefficients: c };
 }
 
-/** Spline of the first derivative: one degree lower on the inner knots. */
+/**
+ * Spline of the first derivative: one degree lower on the inner knots.
+ * Shape:  one coefficient fewer.
+ * Units:  sample unit over axis unit.
+ * Error:  one order below the spline's.
+ * Fails:  never for two sites or more.
+ * Source: as splineBasis.
+ */
 export function derivativeOf(spline: Spline): Spline {
   const { degree, knots, n } = spline.basis;
   const c = new Float64Array(n - 1);
@@ -134,7 +148,14 @@ export function derivativeOf(spline: Spline): Spline {
   return { basis, coefficients: c };
 }
 
-/** Spline of the integral from the first site: one degree higher, its end knots repeated once more. */
+/**
+ * Spline of the integral from the first site: one degree higher, its end knots repeated once more.
+ * Shape:  one coefficient more.
+ * Units:  sample unit times axis unit.
+ * Error:  one order above the spline's.
+ * Fails:  never.
+ * Source: as splineBasis.
+ */
 export function antiderivativeOf(spline: Spline): Spline {
   const { degree, knots, n } = spline.basis;
   const c = new Float64Array(n + 1);

@@ -83,7 +83,14 @@ export function edgeCorrection(edge: Edge): (theta: number, out: Float64Array) =
   };
 }
 
-/** Monomial coefficients of the polynomial through (u_i, v_i), by Newton's divided differences. */
+/**
+ * Monomial coefficients of the polynomial through (u_i, v_i), by Newton's divided differences.
+ * Shape:  as many coefficients as points.
+ * Units:  those of v over powers of those of u.
+ * Error:  that of the polynomial.
+ * Fails:  never for distinct points.
+ * Source: Newton [textbook].
+ */
 export function taylorThrough(u: Float64Array, v: Float64Array): Float64Array {
   const n = u.length;
   const d = Float64Array.from(v);
