@@ -3,9 +3,11 @@ import { listOwnSubmissions as readOwn } from '@/db/reads/submissions/own-submis
 import { ok } from '@/lib/kernel/result';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
 import { mayGenerally } from '@/lib/policy/grant';
+import { isEditableState } from '@/lib/policy/submission-state';
 import { formatState } from '@/lib/reviews/states';
 import type { Outcome } from '@/lib/services/app-error';
 import type { SubmissionLine } from './submission-view';
+import { dayOnly } from './view-parts';
 
 /** What the one who asks wrote or wrote with others, the latest change first. */
 export async function listOwnSubmissions(actor: Actor): Promise<Outcome<readonly SubmissionLine[]>> {
@@ -17,7 +19,8 @@ export async function listOwnSubmissions(actor: Actor): Promise<Outcome<readonly
       ...row,
       stateWords: formatState(row.state, row.round),
       verdicts: (row.verdicts ?? []) as SubmissionLine['verdicts'],
-      updatedAt: row.updatedAt.toISOString(),
+      // Referees move a submission too: the hour would tell who was quick.
+      updatedAt: isEditableState(row.state) ? row.updatedAt.toISOString() : dayOnly(row.updatedAt),
     })),
   );
 }

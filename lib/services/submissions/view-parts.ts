@@ -3,7 +3,9 @@ import { getSubmissionHead, listAuthors } from '@/db/reads/submissions/submissio
 import { listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import type { Actor } from '@/lib/policy/actor';
 import type { SubmissionFacts } from '@/lib/policy/facts';
+import { utcDay } from '@/lib/reviews/anonymity';
 import { formatState } from '@/lib/reviews/states';
+import { sideOf } from '@/lib/services/reviews/side';
 import { asDraftSheet } from './draft-sheet';
 import type { AuthorView, DraftView, RevisionView } from './submission-view';
 import { whatIsAllowed } from './what-is-allowed';
@@ -20,11 +22,14 @@ export async function viewHead(reader: Reader, actor: Actor, facts: SubmissionFa
     stateWords: formatState(head.state, head.round),
     round: head.round,
     currentRevision: head.currentRevision,
-    stateChangedAt: head.stateChangedAt.toISOString(),
+    stateChangedAt: sideOf(actor, facts) === 'editor' ? head.stateChangedAt.toISOString() : dayOnly(head.stateChangedAt),
     authors: authors.map((a): AuthorView => ({ name: a.name, affiliation: a.affiliation, role: a.role, confirmed: a.confirmedAt !== null })),
     may: whatIsAllowed(actor, facts),
   };
 }
+
+/** An acceptance or a report moves a submission: the hour would tell who acted. */
+export const dayOnly = (moment: Date): string => `${utcDay(moment.toISOString())}T00:00:00.000Z`;
 
 export async function viewRevision(reader: Reader, row: RevisionRow): Promise<RevisionView> {
   const files = await listRevisionFiles(reader, row.id);

@@ -106,6 +106,7 @@ describe('nothing an author or reader gets tells who referees', () => {
     const record = must(await getRecord(VISITOR, signed?.outcome === 'signed' ? signed.recordId : ''));
     expect(own.threads[0]?.comments.map((c) => [c.side, c.when.precision])).toEqual([['referee', 'day'], ['authors', 'instant'], ['referee', 'day']]);
     expect([own, must(await getReview(author, id)), record].map(tracesIn)).toEqual([[], [], []]);
+    expect(must(await getReview(author, id)).stateChangedAt).toMatch(/T00:00:00\.000Z$/);
     expect(own.notes).toEqual([]);
     expect(own.invitations).toBeNull();
     await deliver(sink.smtpUrl);
