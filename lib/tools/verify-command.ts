@@ -135,14 +135,27 @@ function tell(io: Console, record: RecordDocument, keyId: string, files: readonl
   io.out('');
   io.out(`What it says: ${LEVEL_MEANINGS[record.decision.level]}`);
   io.out(`  ${coversLine(record)}`);
+  for (const line of numberLines(record)) io.out(`  ${line}`);
   io.out('');
   io.out('Not checked here:');
   for (const line of notChecked(record, keyId, files)) io.out(`  - ${line}`);
   io.out('');
-  io.out('What it does not say:');
+  io.out('Cautions:');
   for (const caution of record.cautions) io.out(`  - ${caution.text}`);
   io.out(`  - ${RULES_SENTENCE}`);
   return EXIT.verified;
+}
+
+/** Claimed and recomputed side by side, with all the digits that were signed. */
+function numberLines(record: RecordDocument): string[] {
+  return record.claims.flatMap((claim) =>
+    claim.points.map((point) => {
+      const at = Object.entries(point.at).map(([name, value]) => ` at ${name} ${value}`).join(',');
+      const unit = claim.unit === '' ? '' : ` ${claim.unit}`;
+      const recomputed = point.value === null ? 'not computable' : `${point.value}${unit}, U = ${point.expandedUncertainty ?? 'unknown'}`;
+      return `${claim.id} ${claim.quantity}${at}: claimed ${point.printed}${unit}, recomputed ${recomputed}: ${point.verdict.replaceAll('-', ' ')}`;
+    }),
+  );
 }
 
 function notChecked(record: RecordDocument, keyId: string, files: readonly FileComparison[] | undefined): string[] {
