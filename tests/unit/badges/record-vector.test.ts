@@ -96,7 +96,7 @@ const cannotUnshare = spawnSync('unshare', ['-rn', 'true']).status !== 0;
 describe('the command itself', () => {
   const run = (prefix: readonly string[], name: string) => {
     const [program, ...args] = [...prefix, process.execPath, '--import', 'tsx', 'lib/tools/verify.ts', path.join(VECTOR, name), '--key', path.join(VECTOR, 'public-key.pem'), '--files', VECTOR];
-    return spawnSync(program ?? '', args, { env: { PATH: process.env['PATH'] ?? '' } as NodeJS.ProcessEnv, encoding: 'utf8' });
+    return spawnSync(program ?? '', args, { env: { PATH: process.env['PATH'] ?? '' } as unknown as NodeJS.ProcessEnv, encoding: 'utf8' });
   };
 
   it('runs without any environment of ours and tells by its exit code', () => {
