@@ -69,7 +69,7 @@ async function takeAll(browser: Browser, shot: Shot, state: State | undefined): 
 async function takeOne(context: BrowserContext, shot: Shot, target: string, variant: string): Promise<void> {
   const page = await context.newPage();
   const remarks: string[] = [];
-  page.on('console', (message) => message.type() === 'error' && remarks.push(message.text()));
+  page.on('console', (message) => message.type() === 'error' && remarks.push(`${message.text()} (${message.location().url})`));
   page.on('pageerror', (error) => remarks.push(error.message));
   const response = await page.goto(shot.url + target, { waitUntil: 'load' });
   await page.waitForLoadState('networkidle', { timeout: 5000 }).catch(() => remarks.push('still talking to the server after 5 s'));

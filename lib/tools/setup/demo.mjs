@@ -67,11 +67,11 @@ function demoEnvironment(known, ports) {
   };
 }
 
-/** Migrates, and seeds an empty database. A seed that was interrupted begins again from nothing. */
+/** Migrates, and seeds an empty database unless SEED=0. A seed that was interrupted begins again from nothing. */
 export async function prepareDatabase(env) {
   if (fs.existsSync(SEEDING)) await tsx('lib/tools/database/drop-demo.ts', env);
   await tsx('lib/tools/migrate.ts', env);
-  if (!fs.existsSync(path.join(ROOT, SEED)) || !(await isEmpty(env))) return;
+  if (process.env.SEED === '0' || !fs.existsSync(path.join(ROOT, SEED)) || !(await isEmpty(env))) return;
   say('filling the empty database with the demonstration');
   fs.writeFileSync(SEEDING, '');
   await tsx(SEED, env);
