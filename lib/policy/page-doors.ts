@@ -16,4 +16,10 @@ export const PAGE_DOORS = {
   'page /forgotten-password': ['anyone'],
   'page /reset-password': ['anyone'],
   'page /account': ['account.read-own'],
+  'page /queue': ['queue.read'],
+  'page /review/{id}': ['review.read-threads'],
+  'page /review/{id}/report': ['review.report'],
+  'page /review/{id}/decide': ['review.see-identities'],
+  'page /desk': ['submission.list-own'],
+  'page /desk/invitations/{id}': ['review.answer-invitation'],
 } as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;

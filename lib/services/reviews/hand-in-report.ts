@@ -60,6 +60,6 @@ function checkAnswers(answers: ReportAnswers) {
 async function tellEditor(tx: Transaction, facts: SubmissionFacts, official: LodgedResult, report: { reportId: string; slot: string; allIn: boolean }): Promise<void> {
   const editor = await findAssignment(tx, facts.submissionId);
   if (!editor) return;
-  const url = `${appOrigin()}/desk/${facts.submissionId}`;
+  const url = `${appOrigin()}/review/${facts.submissionId}`;
   await queueMail(tx, editor.email, `report:${report.reportId}`, reportReceivedLetter({ name: editor.name, title: official.title, slot: report.slot, round: facts.round, allIn: report.allIn, url }));
 }
