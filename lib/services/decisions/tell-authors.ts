@@ -21,7 +21,7 @@ export async function tellAuthors(tx: Transaction, actor: Actor, submissionId: s
       covers: decision.covers,
       remarks: decision.remarks,
       ...decision.letter,
-      url: `${appOrigin()}/submissions/${submissionId}`,
+      url: `${appOrigin()}/review/${submissionId}`,
     });
     await queueMail(tx, author.email, `decision:${decision.decisionId}:${author.userId}`, letter);
   }
