@@ -54,8 +54,8 @@ export interface Quantity {
   readonly required: (inputs: QuantityInputs, declared: DeclaredSettings, over: SettingName | null) => readonly SettingName[];
   readonly sweepable: readonly SettingName[];
   readonly scale: ToleranceScale;
-  /** Natural tolerance at a claimed (or, for inequalities, recomputed) value, in the quantity's unit. */
-  readonly naturalTolerance: (value: number) => number;
+  /** Natural tolerance at a claimed (or, for inequalities, recomputed) value, in the quantity's unit; a few depend on a declared setting. */
+  readonly naturalTolerance: (value: number, declared?: DeclaredSettings) => number;
   /** KaTeX source of the formula as used. */
   readonly formula: string;
   readonly measure: (request: MeasureRequest, watch: Watch) => Measurement;

@@ -20,6 +20,8 @@ export interface Alignment {
   readonly x: number;
   /** Phase of the cross spectrum there, taken out when `turn` is free. */
   readonly turnRad: number;
+  /** ‖a‖² and ‖b‖² without 4 df (real response) or 2 df (both polarisations). */
+  readonly norms: readonly [number, number];
 }
 
 /** With real responses a free phase is the modulus; with both polarisations so is a free rotation. */
@@ -37,6 +39,7 @@ export interface Pair {
   readonly a: Spectrum;
   readonly b: Spectrum;
   readonly weights: BinWeights;
+  readonly lagStride: number;
   readonly secondsPerUnit: readonly number[];
 }
 
@@ -52,9 +55,9 @@ export function align(pair: Pair, freedom: Freedom): Alignment {
   const { a, b, weights } = pair;
   const c = crossSpectrum(a, b, freedom.response, weights);
   const objective: Objective = freedom.turn ? 'modulus' : 'real';
-  const peak = freedom.time ? findLag(c, objective) : unmoved(pair, c, objective);
+  const peak = freedom.time ? findLag(c, objective, pair.lagStride) : unmoved(pair, c, objective);
   const value = c.normA > 0 && c.normB > 0 ? peak.value / Math.sqrt(c.normA * c.normB) : Number.NaN;
-  return { value, x: peak.x, turnRad: freedom.turn ? Math.atan2(peak.im, peak.re) : 0 };
+  return { value, x: peak.x, turnRad: freedom.turn ? Math.atan2(peak.im, peak.re) : 0, norms: [c.normA, c.normB] };
 }
 
 function unmoved(pair: Pair, c: Parameters<typeof evaluateAt>[0], objective: Objective): LagPeak {

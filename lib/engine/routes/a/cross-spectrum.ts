@@ -55,6 +55,14 @@ export function channelsOf(s: Spectrum, response: Response): { readonly plus: Ch
   return { plus: { re: s.zRe, im: s.zIm }, minus: { re: s.yRe, im: s.yIm } };
 }
 
+/** A sweep forms one cross spectrum a mass and is done with it before the next: four buffers serve them all. */
+const buffers: Float64Array[] = [];
+function bufferOf(which: 0 | 1 | 2 | 3, n: number): Float64Array {
+  let buffer = buffers[which];
+  if (buffer === undefined || buffer.length < n) buffers[which] = buffer = new Float64Array(Math.ceil(1.25 * n));
+  return buffer.subarray(0, n);
+}
+
 interface Product {
   readonly re: Float64Array;
   readonly im: Float64Array;
@@ -66,8 +74,8 @@ interface Product {
 function product(a: Channel, b: Channel, weights: BinWeights, conjugated: boolean): Product {
   const { first, values } = weights;
   const n = values.length;
-  const re = new Float64Array(n);
-  const im = new Float64Array(n);
+  const re = bufferOf(conjugated ? 2 : 0, n);
+  const im = bufferOf(conjugated ? 3 : 1, n);
   const { re: aRe, im: aIm } = a;
   const { re: bRe, im: bIm } = b;
   const sign = conjugated ? -1 : 1;
@@ -90,7 +98,7 @@ function product(a: Channel, b: Channel, weights: BinWeights, conjugated: boolea
 
 /**
  * Weighted cross spectrum of two waveforms on common bins.
- * Shape:  both spectra share the bins in Hz; arrays as long as the weights.
+ * Shape:  both spectra share the bins in Hz; arrays as long as the weights, valid until the next call.
  * Units:  spectra's own amplitude; norms are Σ V|a|² and Σ V|b|² without the factor 4 df.
  * Error:  rounding.
  * Fails:  never.

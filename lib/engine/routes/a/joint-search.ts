@@ -94,10 +94,10 @@ export class JointSearch {
 
   pairAt(placement: Placement): Pair {
     const { prepared, sides, bank } = this.sliceAt(placement.massFactor);
-    const { weights, spectra } = prepared;
+    const { weights, spectra, lagStride } = prepared;
     const last = weights.first + weights.values.length - 1;
     const b = bank === null ? spectra[1]! : lineSpectrum(bank, placement.inclinationRad, sides[1].azimuthRad + placement.azimuthShiftRad, weights.first, last);
-    return { a: spectra[0]!, b, weights, secondsPerUnit: sides.map((side) => side.secondsPerUnit) };
+    return { a: spectra[0]!, b, weights, lagStride, secondsPerUnit: sides.map((side) => side.secondsPerUnit) };
   }
 
   private valueAt(placement: Placement): number {

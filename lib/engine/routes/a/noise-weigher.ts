@@ -4,6 +4,8 @@ import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 export interface NoiseWeigher {
   /** A closed form is not asked outside its curve; the power laws of a table continue anywhere. */
   readonly closedForm: boolean;
+  /** No 1/S on the curve is larger: what bounds a tail without a look at every bin. */
+  readonly ceiling: number;
   /** Frequencies at which the formula of 1/S changes, rising; empty for a closed form. */
   readonly kinksHz: Float64Array;
   /** Largest |d ln S/d ln f| in a range, for choosing the bins. */
@@ -105,6 +107,14 @@ function worstMiddle(curve: NoiseCurve, table: Table): number {
   return worst;
 }
 
+/** Between nodes a smooth curve may rise a little above both. */
+const CEILING_ROOM = 1.1;
+const largestNode = ({ coefficients, cells }: Table): number => {
+  let most = 0;
+  for (let i = 0; i < cells; i++) most = Math.max(most, coefficients[NODES * i]!);
+  return most;
+};
+
 function closedFormWeigher(curve: NoiseCurve, halvings: number): NoiseWeigher {
   const table = tableOf(curve, halvings);
   const steepness = (fLowHz: number, fHighHz: number): number => {
@@ -118,6 +128,7 @@ function closedFormWeigher(curve: NoiseCurve, halvings: number): NoiseWeigher {
   const fill: NoiseWeigher['fill'] = (out, logF, first, last, offset) => fillFromTable(table, out, logF, first, last, offset);
   return {
     closedForm: true,
+    ceiling: CEILING_ROOM * largestNode(table),
     kinksHz: new Float64Array(0),
     steepness,
     kinkResolutionHz: () => Infinity,
@@ -168,6 +179,7 @@ function tableWeigher(curve: NoiseCurve, points: Float64Array): NoiseWeigher {
   };
   return {
     closedForm: false,
+    ceiling: points.reduce((most, f) => Math.max(most, 1 / curve.psd(f)), 0),
     kinksHz,
     steepness: (fLowHz, fHighHz) => Math.max(Math.abs(slope[firstKinkAbove(fLowHz)]!), Math.abs(slope[firstKinkAbove(fHighHz)]!)),
     kinkResolutionHz: (fLowHz, fHighHz) => finestKink(kinksHz, slope, fLowHz, fHighHz),

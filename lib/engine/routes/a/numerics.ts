@@ -15,8 +15,10 @@ export interface Numerics {
   readonly noiseTableHalvings: number;
   /** Fraction of the resampled series' own bandwidth that enters the sums. */
   readonly topShare: number;
-  /** Halve a step whose grid ends before the content does; off while scanning for a bracket. */
+  /** Halve a step whose grid ends before the content does; what was learned once holds for every variant. */
   readonly refineStep: boolean;
+  /** Halve bins that do not resolve the band's edges; off while scanning. */
+  readonly refineBins: boolean;
 }
 
 export const houseNumerics: Numerics = {
@@ -27,4 +29,5 @@ export const houseNumerics: Numerics = {
   noiseTableHalvings: 0,
   topShare: 1,
   refineStep: true,
+  refineBins: true,
 };

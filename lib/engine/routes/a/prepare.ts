@@ -1,6 +1,6 @@
 import type { Band, Side } from '@/lib/engine/contract/route';
 import { powerOfTwoFrom } from '@/lib/engine/fourier/transform';
-import { binWeights, type BinWeights } from './bin-weights';
+import { binWeights, glanceAtEdges, type BinRange, type BinWeights } from './bin-weights';
 import type { Numerics } from './numerics';
 import { MOST_SAMPLES } from './sample-grid';
 import { gridFor, lineOf, sideSpectrum, type Content } from './side-spectra';
@@ -12,6 +12,8 @@ export interface Prepared {
   /** Bin spacing in each side's own unit. */
   readonly dF: readonly number[];
   readonly dfHz: number;
+  /** Every so-manieth bin alone still tells all lags of the two records apart. */
+  readonly lagStride: number;
   readonly weights: BinWeights;
   readonly spectra: readonly Spectrum[];
 }
@@ -77,6 +79,7 @@ interface Spacing {
   /** Halvings of the bins in use, before the knob, and those that a steep or distant edge might need. */
   readonly doublings: number;
   readonly mostDoublings: number;
+  readonly lagStride: number;
 }
 
 /** Halvings after which 1/(lag·2^n) is at most the spacing wanted. */
@@ -101,7 +104,7 @@ function spacing(request: PrepareRequest, store: SpectrumStore, numerics: Numeri
   const most = MOST_SAMPLES * 2 ** numerics.padDoublings;
   while (used > 0 && longestTransform(request, store, numerics, 1 / (lag * 2 ** used), ratios) > most) used--;
   const atCap = used < doublings + numerics.padDoublings;
-  return { dF: fitted(request, store, numerics, 1 / (lag * 2 ** used), ratios), doublings, mostDoublings: atCap ? doublings : must + file };
+  return { dF: fitted(request, store, numerics, 1 / (lag * 2 ** used), ratios), doublings, mostDoublings: atCap ? doublings : must + file, lagStride: 2 ** used };
 }
 
 function longestTransform(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, dF: number, ratios: readonly number[]): number {
@@ -129,20 +132,38 @@ function fitted(request: PrepareRequest, store: SpectrumStore, numerics: Numeric
   return ratios.map((ratio) => dF * ratio);
 }
 
-export function weightsFor(spectra: readonly Spectrum[], sides: readonly Side[], band: Band, dfHz: number, store: SpectrumStore, numerics: Numerics): BinWeights {
+function rangeFor(
+  spectra: readonly Spectrum[],
+  sides: readonly Side[],
+  { noise, fLowHz, fHighHz }: Band,
+  dfHz: number,
+  numerics: Numerics,
+  liveLast = Infinity,
+): BinRange {
   const lows = spectra.map((s, i) => s.fFirst / sides[i]!.secondsPerUnit);
   const highs = spectra.map((s, i) => s.fLast / sides[i]!.secondsPerUnit);
-  const { noise } = band;
-  return binWeights(store.weigher(noise, numerics.noiseTableHalvings), {
+  return {
     dfHz,
-    fLowHz: Math.max(band.fLowHz, ...lows),
-    fHighHz: Math.min(band.fHighHz, ...highs),
+    fLowHz: Math.max(fLowHz, ...lows),
+    fHighHz: Math.min(fHighHz, liveLast * dfHz, ...highs),
     firstBin: Math.max(...spectra.map((s) => s.firstBin)),
     lastBin: Math.min(...spectra.map((s) => s.lastBin)),
     curveLowHz: noise.fLowHz,
     curveHighHz: noise.fHighHz,
     order: numerics.edgeOrder,
-  });
+  };
+}
+
+function weightsFor(
+  spectra: readonly Spectrum[],
+  sides: readonly Side[],
+  band: Band,
+  dfHz: number,
+  store: SpectrumStore,
+  numerics: Numerics,
+  liveLast = Infinity,
+): BinWeights {
+  return binWeights(store.weigher(band.noise, numerics.noiseTableHalvings), rangeFor(spectra, sides, band, dfHz, numerics, liveLast));
 }
 
 const everySecond = (values: Float64Array): Float64Array => Float64Array.from({ length: (values.length + 1) >> 1 }, (_, k) => values[2 * k]!);
@@ -156,39 +177,81 @@ interface Survey {
   readonly lastUsed: number;
 }
 
-/** Σ V (|Z|² + |Y|²) over weights from … to − 1. */
-function powerBetween(s: Spectrum, { first, values }: BinWeights, from: number, to: number): number {
+interface Powers {
+  /** |Z|² + |Y|² of every bin. */
+  readonly at: Float64Array;
+  /** Sums of them over each block of TRIM_BLOCK bins and all above it. */
+  readonly tails: Float64Array;
+}
+
+const powers = new WeakMap<Spectrum, Powers>();
+
+/** Once for each spectrum: a sweep looks at the same one at every mass. */
+function powersOf(s: Spectrum): Powers {
+  const known = powers.get(s);
+  if (known) return known;
   const { zRe, zIm, yRe, yIm } = s;
+  const at = new Float64Array(zRe.length);
+  for (let k = 0; k < at.length; k++) at[k] = zRe[k]! * zRe[k]! + zIm[k]! * zIm[k]! + yRe[k]! * yRe[k]! + yIm[k]! * yIm[k]!;
+  const tails = new Float64Array(Math.ceil(at.length / TRIM_BLOCK));
+  for (let k = at.length - 1; k >= 0; k--) tails[Math.floor(k / TRIM_BLOCK)]! += at[k]!;
+  for (let i = tails.length - 2; i >= 0; i--) tails[i]! += tails[i + 1]!;
+  const made = { at, tails };
+  powers.set(s, made);
+  return made;
+}
+
+/** The last bin above which no weight of the curve could make the power visible beside `all`. */
+function lastLiveBin(s: Spectrum, all: number, ceiling: number): number {
+  const { tails } = powersOf(s);
+  const unseen = (UNSEEN * Math.abs(all)) / ceiling / 10;
+  let i = tails.length;
+  while (i > 0 && tails[i - 1]! < unseen) i--;
+  return (i + 1) * TRIM_BLOCK;
+}
+
+/** Σ V (|Z|² + |Y|²) over weights from … to − 1. */
+function powerBetween(power: Float64Array, { first, values }: BinWeights, from: number, to: number): number {
   let sum = 0;
-  for (let j = from; j < to; j++) {
-    const k = first + j;
-    const a = zRe[k]!;
-    const b = zIm[k]!;
-    const c = yRe[k]!;
-    const d = yIm[k]!;
-    sum += values[j]! * (a * a + b * b + c * c + d * d);
-  }
+  for (let j = from; j < to; j++) sum += values[j]! * power[first + j]!;
   return sum;
 }
 
 function survey(s: Spectrum, weights: BinWeights): Survey {
+  const { at: power } = powersOf(s);
   const n = weights.values.length;
   const topIndex = Math.max(0, Math.min(n, Math.ceil((TOP_PART * s.fLast) / s.dF) - weights.first));
-  const top = powerBetween(s, weights, topIndex, n);
-  const all = powerBetween(s, weights, 0, topIndex) + top;
+  const top = powerBetween(power, weights, topIndex, n);
+  const all = powerBetween(power, weights, 0, topIndex) + top;
   let lastUsed = n - 1;
   for (let tail = 0; lastUsed > 0; lastUsed -= TRIM_BLOCK) {
-    tail += powerBetween(s, weights, Math.max(0, lastUsed - TRIM_BLOCK + 1), lastUsed + 1);
+    tail += powerBetween(power, weights, Math.max(0, lastUsed - TRIM_BLOCK + 1), lastUsed + 1);
     if (!(Math.abs(tail) < UNSEEN * Math.abs(all))) break;
   }
   return { all, top, lastUsed };
 }
 
-/** Does the power still hang on how the band's edges are resolved by the bins? */
-function edgeIsLoose(s: Spectrum, weights: BinWeights, all: number): boolean {
-  const sizeAt = (k: number): number => s.zRe[k]! ** 2 + s.zIm[k]! ** 2 + s.yRe[k]! ** 2 + s.yIm[k]! ** 2;
-  const doubt = weights.doubt.reduce((sum, { bin, weight }) => sum + weight * sizeAt(bin), 0);
-  return Math.abs(doubt) > SETTLED * Math.abs(all);
+interface Outlook {
+  /** Does the power of some side still hang on how the band's edges are resolved by the bins? */
+  readonly loose: boolean;
+  readonly liveLast: number;
+}
+
+/** What can be said of these bins before they are weighed one by one. */
+function outlook(request: PrepareRequest, dF: readonly number[], spectra: readonly Spectrum[], store: SpectrumStore, numerics: Numerics): Outlook {
+  const { sides, band } = request;
+  const dfHz = dF[0]! / sides[0]!.secondsPerUnit;
+  const weigher = store.weigher(band.noise, numerics.noiseTableHalvings);
+  const glance = glanceAtEdges(weigher, rangeFor(spectra, sides, band, dfHz, numerics));
+  if (glance === null) return { loose: false, liveLast: Infinity };
+  const views = spectra.map((s) => {
+    const { at: power } = powersOf(s);
+    const all = glance.sum(power);
+    const doubt = glance.doubt.reduce((sum, { bin, weight }) => sum + weight * power[bin]!, 0);
+    const liveLast = all > 0 ? lastLiveBin(s, all, weigher.ceiling) : Infinity;
+    return { loose: Math.abs(doubt) > SETTLED * Math.abs(all), liveLast };
+  });
+  return { loose: views.some(({ loose }) => loose), liveLast: Math.max(...views.map(({ liveLast }) => liveLast)) };
 }
 
 /** A frequency-domain file has no length of its own: is the power still different on every second bin? */
@@ -201,11 +264,13 @@ function fileIsLoose(s: Spectrum, side: Side, band: Band, weights: BinWeights, s
   return Math.abs(2 * coarse - fine) > SETTLED * Math.abs(fine);
 }
 
-function onBins(request: PrepareRequest, plan: Spacing, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Prepared {
-  const { dF } = plan;
+const spectraOn = (request: PrepareRequest, { dF }: Spacing, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Spectrum[] =>
+  request.sides.map((side, i) => sideSpectrum(side, contents?.[i] ?? lineOf(side), dF[i]!, topOf(side, request.band), store, numerics));
+
+function onBins(request: PrepareRequest, plan: Spacing, spectra: readonly Spectrum[], liveLast: number, store: SpectrumStore, numerics: Numerics): Prepared {
+  const { dF, lagStride } = plan;
   const dfHz = dF[0]! / request.sides[0]!.secondsPerUnit;
-  const spectra = request.sides.map((side, i) => sideSpectrum(side, contents?.[i] ?? lineOf(side), dF[i]!, topOf(side, request.band), store, numerics));
-  return { dF, dfHz, spectra, weights: weightsFor(spectra, request.sides, request.band, dfHz, store, numerics) };
+  return { dF, dfHz, lagStride, spectra, weights: weightsFor(spectra, request.sides, request.band, dfHz, store, numerics, liveLast) };
 }
 
 function trimmed(prepared: Prepared, surveys: readonly Survey[]): Prepared {
@@ -228,22 +293,34 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
   let extra = 0;
   for (;;) {
     const plan = spacing(request, store, unpadded, extra);
-    const found = onBins(request, plan, store, numerics, contents);
+    const spectra = spectraOn(request, plan, store, numerics, contents);
+    const mayPad = numerics.refineStep && plan.doublings < plan.mostDoublings;
+    const { loose, liveLast } = outlook(request, plan.dF, spectra, store, numerics);
+    if (mayPad && loose) {
+      extra = padded(request, plan, store);
+      continue;
+    }
+    const found = onBins(request, plan, spectra, liveLast, store, numerics);
     const surveys = found.spectra.map((s) => survey(s, found.weights));
     const full = numerics.refineStep ? fullSide(request, found, surveys, store, numerics) : undefined;
     if (full !== undefined) store.halve(full.waveform);
-    else if (numerics.refineStep && plan.doublings < plan.mostDoublings && isLoose(request, found, surveys, store, numerics)) {
-      extra = plan.doublings + 1;
-      for (const { waveform } of request.sides) if (waveform.domain === 'frequency') store.pad(waveform, extra);
-    } else if (numerics.padDoublings > 0) return onBins(request, spacing(request, store, numerics, extra), store, numerics, contents);
+    else if (mayPad && spectra.some((s, i) => fileIsLoose(s, request.sides[i]!, request.band, found.weights, store, numerics))) extra = padded(request, plan, store);
+    else if (numerics.padDoublings > 0) return finer(request, extra, store, numerics, contents);
     else return trimmed(found, surveys);
   }
 }
 
-const isLoose = (request: PrepareRequest, found: Prepared, surveys: readonly Survey[], store: SpectrumStore, numerics: Numerics): boolean =>
-  found.spectra.some(
-    (s, i) => edgeIsLoose(s, found.weights, surveys[i]!.all) || fileIsLoose(s, request.sides[i]!, request.band, found.weights, store, numerics),
-  );
+function padded(request: PrepareRequest, plan: Spacing, store: SpectrumStore): number {
+  const extra = plan.doublings + 1;
+  for (const { waveform } of request.sides) if (waveform.domain === 'frequency') store.pad(waveform, extra);
+  return extra;
+}
+
+/** The knob for the error bar: beyond what was found to be enough. */
+function finer(request: PrepareRequest, extra: number, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Prepared {
+  const plan = spacing(request, store, numerics, extra);
+  return onBins(request, plan, spectraOn(request, plan, store, numerics, contents), Infinity, store, numerics);
+}
 
 /** A side with power left where its resampled grid ends below both the band and the record's own limit, and whose step may be halved. */
 function fullSide(request: PrepareRequest, { spectra, weights, dF }: Prepared, surveys: readonly Survey[], store: SpectrumStore, numerics: Numerics): Side | undefined {

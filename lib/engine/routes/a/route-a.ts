@@ -50,7 +50,7 @@ function turnAt(request: MatchRequest, at: MatchOutcome): number {
 function outcomeOf(request: MatchRequest, store: SpectrumStore, numerics: Numerics): MatchOutcome {
   const searched = searchedIn(request);
   const { pair, alignment, placement, onBound } = new JointSearch(request, searched, store, numerics).run();
-  const norms = [normOf(pair.a, request.response, pair.weights), normOf(pair.b, request.response, pair.weights)] as const;
+  const { norms } = alignment;
   const scales = [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] as const;
   const mismatch = norms[0] > 0 && norms[1] > 0 ? residualSum(pair, request.response, scales, alignment.x, alignment.turnRad) / 2 : Number.NaN;
   return {

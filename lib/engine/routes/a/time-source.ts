@@ -1,3 +1,4 @@
+import { nyquistFrequency } from '@/lib/engine/conditioning/nyquist-frequency';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
 import { interpolatePair, type UniformGrid } from '@/lib/engine/series/local-interpolation';
@@ -33,19 +34,6 @@ function exactAxis(waveform: Waveform): Float64Array {
   const { axis, uniformStep } = waveform;
   if (uniformStep === null) return axis;
   return axis.map((_, k) => axis[0]! + k * uniformStep);
-}
-
-/** Highest frequency the samples carry: 1/(2 × step), with the median step of an uneven record. */
-export function nyquistOf(waveform: Waveform): number {
-  const { axis, uniformStep } = waveform;
-  if (waveform.domain === 'frequency') return axis[axis.length - 1]!;
-  if (uniformStep !== null) return 0.5 / uniformStep;
-  const steps = new Float64Array(axis.length - 1);
-  for (let i = 0; i < steps.length; i++) steps[i] = axis[i + 1]! - axis[i]!;
-  steps.sort();
-  const middle = steps.length >> 1;
-  const median = steps.length % 2 === 1 ? steps[middle]! : (steps[middle - 1]! + steps[middle]!) / 2;
-  return 0.5 / median;
 }
 
 function fastestOf(axis: Float64Array, re: Float64Array, im: Float64Array | null): number {
@@ -136,7 +124,7 @@ export function timeSource(waveform: Waveform): TimeSource {
     waveform,
     axis,
     span: axis[axis.length - 1]! - axis[0]!,
-    nyquist: nyquistOf(waveform),
+    nyquist: nyquistFrequency(waveform),
     fastest: Math.max(0, ...parts.map((part) => fastestOf(axis, part.re, real ? null : part.im))),
     lineOfSight,
     mode: partOn,

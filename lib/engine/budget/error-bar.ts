@@ -1,0 +1,94 @@
+/**
+ * Budget: how far a number can be trusted. The computation's own part comes from turning each knob
+ * of route A; what was chosen, or cannot be known from the files, stands beside it and never in U.
+ */
+import type { PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
+import type { Waveform } from '@/lib/engine/contract/waveform';
+import type { Evaluated, Recipe, RouteKit } from '@/lib/engine/quantities/detector/recipe';
+import { createRouteA } from '@/lib/engine/routes/a/route-a';
+import { houseNumerics, type Numerics } from '@/lib/engine/routes/a/numerics';
+import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+import { withFewerDigits } from './reduce-digits';
+
+interface Knob {
+  readonly name: string;
+  readonly numerics: Numerics;
+}
+
+const knob = (name: string, change: Partial<Numerics>): Knob => ({ name, numerics: { ...houseNumerics, refineStep: false, ...change } });
+
+/** engine.md: step/2, padding ×2, end weights 8 → 6, noise table step/2, interpolation 8 → 6, upper end lowered. */
+const knobs: readonly Knob[] = [
+  knob('half the time step', { stepHalvings: 1 }),
+  knob('twice the padding', { padDoublings: 1 }),
+  knob('end weights of order 6', { edgeOrder: 6 }),
+  knob('half the step of the noise table', { noiseTableHalvings: 1 }),
+  knob('interpolation of order 6', { interpolationOrder: 6 }),
+  knob('upper end lowered by 5 %', { topShare: 0.95 }),
+];
+
+export const kitOf = (numerics: Numerics, store: SpectrumStore): RouteKit => ({
+  route: createRouteA(numerics, store),
+  scan: createRouteA({ ...numerics, refineStep: false, refineBins: false }, store),
+});
+
+/** More digits than this are a double's own. */
+const DOUBLE_DIGITS = 16;
+
+export interface ComputationError {
+  /** Half-widths. */
+  readonly quadrature: number;
+  readonly rounding: number;
+  readonly largestKnob: string;
+  readonly expanded: number;
+}
+
+const ROOT3 = Math.sqrt(3);
+
+/** U = 2 u_c with rectangular components (JCGM 100: u = half-width/√3). */
+export const expandedOf = (...halfWidths: readonly number[]): number => 2 * Math.sqrt(halfWidths.reduce((sum, h) => sum + (h * h) / 3, 0));
+
+export const standardOf = (halfWidth: number): number => halfWidth / ROOT3;
+
+const roundedOnce = new WeakMap<Waveform, Map<number, Waveform>>();
+function fewer(waveform: Waveform, digits: number): Waveform {
+  const known = roundedOnce.get(waveform) ?? new Map<number, Waveform>();
+  roundedOnce.set(waveform, known);
+  const made = known.get(digits) ?? withFewerDigits(waveform, digits);
+  known.set(digits, made);
+  return made;
+}
+
+/** The taper and the modes in use stay those of the data as given; only the samples are printed shorter. */
+function printedShorter(c: ConditionedWaveform): ConditionedWaveform {
+  const digits = c.given.significantDigits;
+  if (digits === null || digits >= DOUBLE_DIGITS || digits < 2) return c;
+  return { ...c, used: (lMax) => fewer(c.used(lMax), digits - 1) };
+}
+
+export const isPrinted = (request: PointRequest): boolean =>
+  [request.a, request.b].some((c) => c !== null && c.given.significantDigits !== null && c.given.significantDigits < DOUBLE_DIGITS);
+
+/**
+ * The computation's own error at one point: each knob turned once, the changes added up.
+ * Shape:  one point; `found` is route A's value there.
+ * Units:  the quantity's.
+ * Error:  an estimate; it errs on the large side, because changes are added without regard to sign.
+ * Fails:  a knob that gives no number makes the error NaN, and with it the verdict unsettled or not computable.
+ * Source: engine.md (error bar by itself); JCGM 100:2008 for the combination.
+ */
+export function computationError(recipe: Recipe, request: PointRequest, found: Evaluated, store: SpectrumStore): ComputationError {
+  const base = recipe.again(kitOf(houseNumerics, store), request, found);
+  let quadrature = Math.abs(base - found.value);
+  let largest = { name: 'none', by: 0 };
+  for (const { name, numerics } of knobs) {
+    const by = Math.abs(recipe.again(kitOf(numerics, store), request, found) - base);
+    quadrature += by;
+    if (by > largest.by) largest = { name, by };
+  }
+  quadrature = Math.max(quadrature, recipe.floor(found.value));
+  const shorter = { ...request, a: printedShorter(request.a), b: request.b === null ? null : printedShorter(request.b) };
+  const rounding = isPrinted(request) ? Math.abs(recipe.again(kitOf(houseNumerics, store), shorter, found) - base) / 10 : 0;
+  return { quadrature, rounding, largestKnob: largest.name, expanded: expandedOf(quadrature, rounding) };
+}

@@ -1,0 +1,131 @@
+import { errorBarIndices, fromNeighbours, routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
+import { detectorBudget } from '@/lib/engine/budget/detector-budget';
+import { computationError, kitOf, type ComputationError } from '@/lib/engine/budget/error-bar';
+import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
+import type { DetectorPoint, PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import type { MeasuredPoint, Measurement } from '@/lib/engine/contract/measurement';
+import { Cancelled, notComputable, type MeasureRequest, type Quantity, type Watch } from '@/lib/engine/contract/quantity';
+import type { SettingName } from '@/lib/engine/contract/settings';
+import { noHorizon, startsInBand } from '@/lib/engine/findings/detector-findings';
+import { houseNumerics } from '@/lib/engine/routes/a/numerics';
+import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+import { routeB } from '@/lib/engine/routes/b/route-b';
+import { detectorFigures } from './figures';
+import type { Evaluated, Recipe, RouteKit } from './recipe';
+import { findingsOf, stopsOf, valueStops } from './stops';
+import { usedSettings } from './used-settings';
+
+/** What a quantity of one detector is, beside its recipe. */
+export interface DetectorQuantity {
+  readonly id: string;
+  readonly settings: readonly SettingName[];
+  readonly recipe: Recipe;
+  readonly naturalTolerance: Quantity['naturalTolerance'];
+}
+
+export interface Walk {
+  readonly quantity: DetectorQuantity;
+  readonly request: MeasureRequest;
+  readonly requests: readonly PointRequest[];
+  readonly store: SpectrumStore;
+  readonly kitA: RouteKit;
+}
+
+const pointsOf = ({ over }: MeasureRequest): Readonly<Record<string, number>>[] =>
+  over === null ? [{}] : over.values.map((value) => ({ [over.setting]: value }));
+
+function requestsOf(quantity: DetectorQuantity, request: MeasureRequest): PointRequest[] {
+  const { settings, inputs } = request;
+  const modes = settings.modes ?? 'all';
+  const a = conditionWaveform(inputs.of.a!, modes);
+  const b = inputs.of.b === undefined ? null : inputs.of.b === inputs.of.a ? a : conditionWaveform(inputs.of.b, modes);
+  return pointsOf(request).map((at) => {
+    const declared = { ...settings, ...at };
+    return { declared, at, a, b, noise: inputs.noise!, traits: quantity.recipe.traits(declared) };
+  });
+}
+
+function step(watch: Watch, fraction: number, doing: string): void {
+  if (watch.cancelled()) throw new Cancelled();
+  watch.onProgress(fraction, doing);
+}
+
+/** One route over some points; null where it was not asked. */
+function evaluateAt(walk: Walk, kit: RouteKit, indices: readonly number[], watch: Watch, span: readonly [number, number], doing: string): Map<number, Evaluated> {
+  const found = new Map<number, Evaluated>();
+  indices.forEach((i, k) => {
+    step(watch, span[0] + ((span[1] - span[0]) * k) / indices.length, doing);
+    found.set(i, walk.quantity.recipe.evaluate(kit, walk.requests[i]!));
+  });
+  return found;
+}
+
+const finiteOrNull = (x: number | undefined): number | null => (x !== undefined && Number.isFinite(x) ? x : null);
+
+const finiteComponents = (components: Readonly<Record<string, number | null>>): Record<string, number | null> =>
+  Object.fromEntries(Object.entries(components).map(([name, x]) => [name, x === null ? null : finiteOrNull(x)]));
+
+function remarksOf(walk: Walk, found: Evaluated, shown: DetectorPoint): string[] {
+  const cut = walk.quantity.recipe.snrLike && startsInBand(walk.requests[0]!.a, shown, shown.a);
+  return [...new Set([...(found.remarks ?? []), ...(cut ? ['lower bound only'] : [])])];
+}
+
+/**
+ * Measures one detector quantity at all points of a claim.
+ * Shape:  one point, or one for every swept value; route B at all of up to ten points, of more at eleven.
+ * Units:  the quantity's.
+ * Error:  U from route A's own knobs and the printed digits, measured at up to five points.
+ * Fails:  findings that stop leave every value null; throws only when cancelled.
+ * Source: settings.md sections 2 to 4.
+ */
+export function measureDetector(quantity: DetectorQuantity, request: MeasureRequest, watch: Watch): Measurement {
+  const ats = pointsOf(request);
+  if (request.inputs.of.a === undefined || request.inputs.noise === null) return notComputable([], ats);
+  step(watch, 0, 'preparing the waveforms');
+  const requests = requestsOf(quantity, request);
+  const stops = stopsOf(quantity, request, requests);
+  if (stops.length > 0) return notComputable([...stops, ...findingsOf(quantity, requests, null)], ats);
+  const store = new SpectrumStore();
+  const walk: Walk = { quantity, request, requests, store, kitA: kitOf(houseNumerics, store) };
+  const all = requests.map((_, i) => i);
+  const byA = evaluateAt(walk, walk.kitA, all, watch, [0.02, 0.4], 'route A');
+  const found = all.map((i) => byA.get(i)!);
+  const late = valueStops(quantity, walk, found);
+  if (late.length > 0) return notComputable([...late, ...findingsOf(quantity, requests, found)], ats);
+  return weighed(walk, found, watch);
+}
+
+function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measurement {
+  const { quantity, request, requests, store } = walk;
+  const { recipe } = quantity;
+  const values = found.map(({ value }) => finiteOrNull(value));
+  const worst = worstIndex(values, request.claimed, (claimed) => quantity.naturalTolerance(claimed, request.settings));
+  const routeBPoints = routeBIndices(found.length, worst);
+  const byB = evaluateAt(walk, { route: routeB, scan: routeB }, routeBPoints, watch, [0.4, 0.75], 'route B');
+  const errors = new Map<number, ComputationError>();
+  errorBarIndices(found.length, worst).forEach((i, k, chosen) => {
+    step(watch, 0.75 + (0.15 * k) / chosen.length, 'error bar');
+    errors.set(i, computationError(recipe, requests[i]!, found[i]!, store));
+  });
+  const bars = fromNeighbours(found.length, new Map([...errors].map(([i, error]) => [i, error.expanded])));
+  step(watch, 0.9, 'error budget');
+  const shown = requests.map((r, i) => recipe.shownPoint(r, found[i]!));
+  const budget = detectorBudget({ recipe, kit: walk.kitA, request: requests[worst]!, traits: requests[worst]!.traits, found: found[worst]!, error: errors.get(worst)! });
+  const points = found.map((here, i): MeasuredPoint => {
+    const remarks = remarksOf(walk, here, shown[i]!);
+    const components = { ...here.components, ...recipe.alsoShown?.(requests[i]!, store) };
+    return {
+      at: requests[i]!.at,
+      value: values[i]!,
+      routes: { A: values[i]!, B: finiteOrNull(byB.get(i)?.value) },
+      expandedUncertainty: finiteOrNull(bars[i]),
+      ...(Object.keys(components).length === 0 ? {} : { components: finiteComponents(components) }),
+      ...(remarks.length > 0 ? { remarks } : {}),
+    };
+  });
+  const { a, b } = requests[0]!;
+  const used = usedSettings({ points: shown, waveforms: [a, ...(b && b !== a ? [b] : [])], traits: requests[0]!.traits, allowed: quantity.settings, swept: request.over?.setting ?? null });
+  step(watch, 0.97, 'figures');
+  const figures = request.withFigures ? detectorFigures({ walk, found, shown, worst, points }) : [];
+  return { points, budget, findings: findingsOf(quantity, requests, found), ...used, routeBPoints, figures };
+}

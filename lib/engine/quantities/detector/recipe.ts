@@ -1,0 +1,44 @@
+/**
+ * The quantities of one detector share their walk: settings to points, two routes, an error bar,
+ * findings and figures. What makes each one itself is a recipe: a value at a point by a route.
+ */
+import type { DetectorPoint, DetectorTraits, PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import type { DetectorRoute, MatchOutcome } from '@/lib/engine/contract/route';
+import type { DeclaredSettings } from '@/lib/engine/contract/settings';
+import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+
+/** A route, and the same route allowed to be cruder while it only looks for a bracket. */
+export interface RouteKit {
+  readonly route: DetectorRoute;
+  readonly scan: DetectorRoute;
+}
+
+export interface Evaluated {
+  /** NaN when there is nothing to compute. */
+  readonly value: number;
+  readonly components?: Readonly<Record<string, number | null>>;
+  readonly remarks?: readonly string[];
+  /** Where a search ended, so that the error bar does not search again. */
+  readonly outcome?: MatchOutcome;
+  /** Redshift at which a horizon was found. */
+  readonly redshift?: number;
+  readonly roots?: readonly number[];
+}
+
+export interface Recipe {
+  readonly traits: (declared: DeclaredSettings) => DetectorTraits;
+  readonly evaluate: (kit: RouteKit, request: PointRequest) => Evaluated;
+  /** The same value under other numerics or data, from where the first search ended. */
+  readonly again: (kit: RouteKit, request: PointRequest, found: Evaluated) => number;
+  /** Components that only route A's spectra show; for the reader, not compared. */
+  readonly alsoShown?: (request: PointRequest, store: SpectrumStore) => Readonly<Record<string, number | null>>;
+  /** Smallest half-width of the computation's error, at a value. */
+  readonly floor: (value: number) => number;
+  /** A signal cut by the band's edge makes this value a lower bound. */
+  readonly snrLike: boolean;
+  /** The point whose band and mass the findings and figures look at. */
+  readonly shownPoint: (request: PointRequest, found: Evaluated) => DetectorPoint;
+}
+
+/** Relative rounding that no rerun shows. */
+export const ROUNDING_FLOOR = 1e-13;

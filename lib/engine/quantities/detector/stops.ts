@@ -1,0 +1,122 @@
+import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
+import { canRescale, detectorPoint, type DetectorPoint, type PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import type { Finding } from '@/lib/engine/contract/finding';
+import type { MeasureRequest } from '@/lib/engine/contract/quantity';
+import type { Side } from '@/lib/engine/contract/route';
+import * as look from '@/lib/engine/findings/detector-findings';
+import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
+import { powerInResponse } from './loudness';
+import type { DetectorQuantity, Walk } from './measure-detector';
+import type { Evaluated } from './recipe';
+
+const roleWaveforms = ({ a, b }: PointRequest): ConditionedWaveform[] => (b === null || b === a ? [a] : [a, b]);
+
+const harmonicSize = (side: Side) => (l: number, m: number): number => {
+  const y = spinWeightedHarmonic(l, m, side.inclinationRad, side.azimuthRad);
+  return Math.hypot(y.re, y.im);
+};
+
+const stop = (code: string, where: string, text: string, fix: string): Finding => ({ code, level: 'stops-lodging', where, text, fix });
+
+/** Variables that have no strain, and masses that cannot mean what the claim says. */
+function waveformStops(request: PointRequest, point: DetectorPoint): (Finding | null)[] {
+  return roleWaveforms(request).flatMap((c) => {
+    const { name, variable } = c.given;
+    const foreign = variable === 'phi2' || variable === 'luminosity';
+    const frozen = request.declared.massFrame === 'source' && !canRescale(c.given);
+    return [
+      foreign ? stop('engine/not-a-strain', name, `${name} holds ${variable}, from which no strain follows.`, 'Claim a quantity of gravitational waves on strain, news or ψ₄.') : null,
+      frozen ? stop('engine/mass-not-rescalable', name, `${name} is a physical strain without a mass and distance of its own; a source-frame mass cannot be applied to it.`, 'Give totalMassMsun and distanceMpc beside the file, or declare massFrame "detector".') : null,
+      Number.isFinite(point.a.secondsPerUnit) ? null : stop('engine/setting-missing', name, `The mass or the redshift of ${name} is not known.`, 'Declare totalMassMsun, and redshift or distanceMpc for a source-frame mass.'),
+    ];
+  });
+}
+
+function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | null)[] {
+  const { maximise, response } = point;
+  const lacking = roleWaveforms(request).find((c) => c.given.content.kind !== 'modes');
+  const turned = maximise.includes('polarisation') && response !== 'complex';
+  const inclined = maximise.includes('inclination') && request.b !== null && request.b.given.content.kind !== 'modes';
+  return [
+    turned ? stop('engine/polarisation-needs-complex', 'maximise', 'The polarisation can only be maximised over when both polarisations are used; the response of this claim is one of them.', 'Declare response "complex", or leave out "polarisation".') : null,
+    inclined ? stop('engine/inclination-needs-modes', lacking!.given.name, 'The inclination can only be maximised over for a waveform given as modes.', 'Attach the modes, or leave out "inclination".') : null,
+  ];
+}
+
+function pointStops(request: PointRequest): Finding[] {
+  const point = detectorPoint(request);
+  const { band } = point;
+  const c = roleWaveforms(request);
+  const sides = [point.a, ...(point.b === null ? [] : [point.b])];
+  const allSky = point.average === 'sky-orientation' || point.average === 'volume';
+  const empty = band.fHighHz > band.fLowHz ? null : look.noSignal(request.a.given.name, `between ${look.short(band.fLowHz, 6)} and ${look.short(band.fHighHz, 6)} Hz: its samples carry nothing above the lower edge`);
+  const found = [
+    ...waveformStops(request, point),
+    look.curveInvalid(request.noise),
+    look.bandBeyondCurve(point),
+    look.averageTwice(point),
+    look.averageWithoutModes(point, c),
+    ...maximiseStops(point, request),
+    request.traits.horizon ? null : empty,
+    ...c.map((waveform, i) => look.nothingSeen(waveform, sides[i] ?? sides[0]!, harmonicSize(sides[i] ?? sides[0]!), allSky)),
+  ];
+  return found.filter((finding) => finding !== null);
+}
+
+/** One entry per text: points of a sweep often stop for the same reason. */
+const distinct = (findings: readonly Finding[]): Finding[] => [...new Map(findings.map((f) => [`${f.code}|${f.where}|${f.text}`, f])).values()];
+
+/** What makes a claim impossible to compute, read off before any transform; one message for each cause. */
+export function stopsOf(_quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[]): Finding[] {
+  const all = distinct(requests.flatMap(pointStops));
+  const seen = new Set<string>();
+  return all.filter(({ code, where }) => !seen.has(`${code}|${where}`) && seen.add(`${code}|${where}`));
+}
+
+/** Of the power along a line of sight, a response that gets less than this sees rounding only. */
+const NOTHING = 1e-22;
+
+/** Stops that only the numbers show: no power in the band, or a response that sees none of it. */
+export function valueStops(_quantity: DetectorQuantity, walk: Walk, found: readonly Evaluated[]): Finding[] {
+  const stops = found.flatMap((here, i) => {
+    const request = walk.requests[i]!;
+    if (Number.isFinite(here.value) && !(here.value === 0 && request.traits.loudness)) return [];
+    const point = detectorPoint(request);
+    if (request.traits.horizon && here.roots === undefined) return [look.noHorizon(request.a.given.name, point.threshold)];
+    return [look.noSignal(request.a.given.name, `between ${look.short(point.band.fLowHz, 6)} and ${look.short(point.band.fHighHz, 6)} Hz${request.b ? `, or ${request.b.given.name} has none` : ''}, or the value is not finite`)];
+  });
+  return distinct(stops.length > 0 ? stops.slice(0, 1) : blindResponse(walk));
+}
+
+/** For example the cross polarisation of an edge-on binary: what is left are the last digits of the harmonics. */
+function blindResponse({ requests, kitA }: Walk): Finding[] {
+  const request = requests[0]!;
+  const point = detectorPoint(request);
+  if (point.response === 'complex' || point.average !== 'optimal') return [];
+  return [point.a, ...(point.b === null ? [] : [point.b])].flatMap((side) => {
+    const gram = kitA.route.gram(side, point.band);
+    const sees = powerInResponse(gram, point.response);
+    if (sees > NOTHING * (gram.plusPlus + gram.crossCross)) return [];
+    return [look.noSignal(side.waveform.name, 'in the response of the claim along its line of sight')];
+  });
+}
+
+/** Findings that do not stop, over all points, each once with the points it concerns. */
+export function findingsOf(quantity: DetectorQuantity, requests: readonly PointRequest[], found: readonly Evaluated[] | null): Finding[] {
+  const points = requests.map((request, i) => (found === null ? detectorPoint(request) : quantity.recipe.shownPoint(request, found[i]!)));
+  const first = requests[0]!;
+  const level = first.traits.loudness ? 'worth-a-look' : 'needs-answer';
+  const perWaveform = roleWaveforms(first).flatMap((c) => {
+    const isA = c === first.a;
+    const affected = points.map((point) => ({ point, side: isA ? point.a : (point.b ?? point.a) }));
+    return [
+      look.negativeMAssumed(c),
+      look.modesMissing(c),
+      look.signalStartsInBand(c, affected, level),
+      look.taperRoom(c, affected),
+      look.bandBeyondSampling(c, affected),
+    ];
+  });
+  const roots = (found ?? []).map((here, i) => look.severalRoots(requests[i]!.a.given.name, first.traits.horizon && requests[i]!.b === null ? (here.roots ?? []) : []));
+  return distinct([...perWaveform, ...roots].filter((finding) => finding !== null));
+}
