@@ -12,6 +12,7 @@ export const REVIEW_DOORS = {
   'POST /api/v1/invitations/{id}/answer': ['review.answer-invitation'],
   'POST /api/v1/submissions/{id}/reports': ['review.report'],
   'POST /api/v1/submissions/{id}/notes': ['review.note-to-editor'],
+  'POST /api/v1/submissions/{id}/reminders': ['review.invite'],
   'GET /api/v1/submissions/{id}/decisions': ['review.see-identities'],
   'POST /api/v1/submissions/{id}/decisions': ['review.send-back', 'review.set-aside', 'review.enter'],
   'GET /api/v1/queue': ['queue.read'],

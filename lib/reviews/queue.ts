@@ -102,7 +102,7 @@ const inDeciding: Placer = (facts, now) =>
 
 const withAuthors: Placer = (facts, now) => {
   const over = dayOf(facts.stateSince, now) > CLOCK_DAYS.revision - CHASE_BEFORE_DUE_DAYS;
-  return place(now, over ? 'chase' : 'waiting', over ? 'remind' : 'open', 'revision asked', 'Authors', facts.stateSince, CLOCK_DAYS.revision);
+  return place(now, over ? 'chase' : 'waiting', 'open', 'revision asked', 'Authors', facts.stateSince, CLOCK_DAYS.revision);
 };
 
 const lodged: Placer = (facts, now) => place(now, 'waiting', 'open', 'being computed', 'Machine', facts.stateSince, CLOCK_DAYS.checking);

@@ -18,6 +18,14 @@ export const invitationLetter = (facts: { readonly name: string; readonly title:
     `Please answer by ${facts.answerBy}:\n${facts.url}`,
   );
 
+const OWED = {
+  answer: 'Your answer to the invitation to referee it is still out. If you cannot, one click says so.',
+  report: 'Your report is still out. If you need more time, or cannot write it, tell the editor by a note on the same page.',
+} as const;
+
+export const reminderLetter = (facts: { readonly name: string; readonly title: string; readonly owes: keyof typeof OWED; readonly url: string }): Letter =>
+  write(`A reminder: “${facts.title}”`, `Dear ${facts.name},`, `This is about “${facts.title}”. ${OWED[facts.owes]}`, facts.url);
+
 export const reportReceivedLetter = (facts: { readonly name: string; readonly title: string; readonly slot: string; readonly round: number; readonly allIn: boolean; readonly url: string }): Letter =>
   write(
     `A report on “${facts.title}” is in`,

@@ -8,6 +8,7 @@ import { getDesk } from '@/lib/services/reviews/get-desk';
 import { handInReport } from '@/lib/services/reviews/hand-in-report';
 import { openThread } from '@/lib/services/reviews/open-thread';
 import { replyToThread } from '@/lib/services/reviews/reply-to-thread';
+import { remind } from '@/lib/services/reviews/remind';
 import { sendToReview } from '@/lib/services/reviews/send-to-review';
 import { getReview } from '@/lib/services/submissions/get-lodged';
 import { checkDraft } from '@/lib/services/submissions/check-draft';
@@ -76,6 +77,17 @@ describe('mail goes out though the mail server was away', () => {
 
   it('waits longer each time, and never longer than three hours', () => {
     expect([0, 1, 2, 3, 12, 100].map(waitAfter)).toEqual([15, 30, 60, 120, 10_800, 10_800]);
+  });
+
+  it('who owes a report is reminded once a day, and nobody else', async () => {
+    const id = await inTriage(desk, author);
+    await withReferee(id, editor, referee);
+    await withReferee(id, editor, other);
+    must(await handInReport(other, id, REPORT));
+    for (let i = 0; i < 2; i++) expect(must(await remind(editor, id))).toEqual({ reminded: 1 });
+    const reminders = await desk.sql<{ recipient: string }>(`select recipient from outbox where dedupe_key like 'reminder:%'`);
+    expect(reminders.map((m) => m.recipient.split('@')[1])).toEqual(['saltern.example']);
+    expect(await remind(referee, id)).toMatchObject({ ok: false, error: { code: 'denied' } });
   });
 
   it('an act that is undone sends nothing', async () => {

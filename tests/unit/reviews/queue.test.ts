@@ -31,7 +31,7 @@ describe('the queue says what is needed now, of whom, since when', () => {
     ['the run stopped', { state: 'lodged', run: 'stopped' }, 1, ['unsettled-runs', 'look', 'Administrator', 1, 2]],
     ['being computed', { state: 'lodged', run: 'working' }, 1, ['waiting', 'open', 'Machine', 1, 1]],
     ['revision asked', { state: 'back-with-author' }, 20, ['waiting', 'open', 'Authors', 20, 30]],
-    ['revision overdue', { state: 'back-with-author' }, 29, ['chase', 'remind', 'Authors', 29, 30]],
+    ['revision overdue', { state: 'back-with-author' }, 29, ['chase', 'open', 'Authors', 29, 30]],
   ] as const)('%s', (_what, over, day, expected) => expect(placed(over as Partial<QueueFacts>, day)).toEqual(expected));
 
   it('drafts and ended matters are no editor’s business', () => {
