@@ -9,7 +9,7 @@ interface AuthFormProps {
   readonly button: string;
   readonly busy: string;
   /** Sent besides the fields. */
-  readonly extra?: Readonly<Record<string, string>>;
+  readonly extra?: Readonly<Record<string, string | boolean>>;
   /** Where to go afterwards; without it `done` is shown in the form's place. */
   readonly next?: string;
   readonly done?: ReactNode;

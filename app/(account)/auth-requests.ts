@@ -1,11 +1,14 @@
+import { formatProblem, type Problem } from '@/lib/kernel/problem';
+
 /** What the account forms ask of the sign-in service, and its answers as sentences. */
 export type AuthAnswer = { readonly ok: true } | { readonly ok: false; readonly sentence: string };
 
-export type AuthPath = 'sign-in/email' | 'sign-up/email' | 'request-password-reset' | 'reset-password' | 'sign-out';
+export type AuthPath = 'sign-in/email' | 'sign-up/email' | 'request-password-reset' | 'reset-password' | 'change-password' | 'sign-out';
 
 const sentences: Readonly<Record<string, string>> = {
   INVALID_EMAIL_OR_PASSWORD: 'This e-mail and password do not belong together. Try again, or set a new password.',
   EMAIL_NOT_VERIFIED: 'This address is not confirmed yet. A new letter with the link is on its way to it; open the link, then sign in.',
+  INVALID_PASSWORD: 'The present password is not this one. Try again, or set a new one by mail.',
   INVALID_TOKEN: 'This link has been used or is older than an hour. Ask for a new one.',
   PASSWORD_TOO_SHORT: 'The password has fewer than 15 characters. Four or five unrelated words do well.',
   PASSWORD_TOO_LONG: 'The password has more than 256 characters. Choose a shorter one.',
@@ -13,9 +16,11 @@ const sentences: Readonly<Record<string, string>> = {
 };
 
 function sentenceOf(status: number, body: unknown, retryAfter: string | null): string {
-  if (status === 429) return `Too many tries. Wait ${retryAfter ? `${retryAfter} seconds` : 'a minute'} and try again.`;
-  const { code, message, detail } = (typeof body === 'object' && body !== null ? body : {}) as { code?: string; message?: string; detail?: string };
-  return (code && sentences[code]) || detail || message || 'The sign-in service gave no reason. Try again in a minute.';
+  if (status === 429 && !(body as { detail?: string } | null)?.detail) return `Too many tries. Wait ${retryAfter ? `${retryAfter} seconds` : 'a minute'} and try again.`;
+  const said = (typeof body === 'object' && body !== null ? body : {}) as { code?: string; message?: string; detail?: string; problems?: readonly Problem[] };
+  const known = said.code ? sentences[said.code] : undefined;
+  const reasons = (said.problems ?? []).map(formatProblem).join(' ');
+  return known ?? ([said.detail ?? said.message, reasons].filter(Boolean).join(' ') || 'The sign-in service gave no reason. Try again in a minute.');
 }
 
 export async function askAuth(path: AuthPath, body: Readonly<Record<string, unknown>>): Promise<AuthAnswer> {

@@ -20,7 +20,7 @@ export default async function Landing() {
               The half its authors claim, and the half this server recomputes from their own waveform files by two independent routes. Counterfoil sets them side by side, says by how much they part and why, and enters the record once referees and an editor have read it.
             </p>
             <div className="mt-6 flex flex-wrap gap-3">
-              <LinkButton href="/submissions" tone="main" size="tall">Lodge a claim</LinkButton>
+              <LinkButton href="/compose" tone="main" size="tall">Lodge a claim</LinkButton>
               <LinkButton href="/register" size="tall">Read the register</LinkButton>
             </div>
           </div>

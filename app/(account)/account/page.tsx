@@ -1,9 +1,12 @@
 import type { Metadata } from 'next';
+import Link from 'next/link';
 import type { ReactNode } from 'react';
 import { loadFor } from '@/lib/http/page-guard';
 import { getOwnAccount } from '@/lib/services/accounts/get-own-account';
 import { Facts } from '@/app/_ui/primitives/facts';
-import { LinkButton } from '@/app/_ui/primitives/link-button';
+import { Notice } from '@/app/_ui/primitives/notice';
+import { AuthForm } from '../auth-form';
+import { PasswordField } from '../password-field';
 import { SignOutButton } from './sign-out-button';
 
 export const metadata: Metadata = { title: 'Account' };
@@ -27,7 +30,13 @@ export default async function Account() {
           <Facts facts={[['Name', account.name], ['Affiliation', account.affiliation ?? 'not given'], ['E-mail', account.email], ['Account', roleWords[account.role]]]} />
         </Group>
         <Group id="password" title="Password" hint="Setting a new one signs you out everywhere else.">
-          <LinkButton href="/forgotten-password">Set a new password</LinkButton>
+          <div className="max-w-[420px]">
+            <AuthForm path="change-password" button="Change the password" busy="Changing it" extra={{ revokeOtherSessions: true }} done={<Notice kind="done">The new password is set. Every other session is signed out.</Notice>}>
+              <PasswordField name="currentPassword" label="Present password" />
+              <PasswordField name="newPassword" label="New password" isNew hint="15 characters or more. Four or five unrelated words do well." />
+            </AuthForm>
+            <p className="mt-3 text-ui"><Link href="/forgotten-password" className="inline-flex min-h-8 items-center">I do not know the present one</Link></p>
+          </div>
         </Group>
         <Group id="session" title="This session" hint="Ends by itself after 12 hours without use, and after 7 days in any case.">
           <SignOutButton />

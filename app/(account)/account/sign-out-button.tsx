@@ -10,8 +10,10 @@ export function SignOutButton() {
   const leave = async () => {
     setBusy(true);
     const answer = await askAuth('sign-out', {});
-    if (answer.ok) window.location.assign('/');
-    else {
+    if (answer.ok) {
+      // A whole page load: what was fetched for a member must not linger.
+      window.location.href = '/';
+    } else {
       setProblem(answer.sentence);
       setBusy(false);
     }

@@ -14,7 +14,6 @@ export default function SignUp() {
       path="sign-up/email"
       button="Open the account"
       busy="Opening it"
-      extra={{ callbackURL: '/account' }}
       done={<Notice kind="done" word="Next">If the address is free, a letter with a link is on its way to it. Open the link within a day, and the account is yours.</Notice>}
     >
       <TextField label="Name" name="name" autoComplete="name" required maxLength={120} hint="As it should stand on a record." />

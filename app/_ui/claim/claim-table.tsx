@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import { ClaimRows } from './claim-rows';
 import type { RecordSlots, RecordView } from './record-view';
 
@@ -61,6 +62,6 @@ export const ClaimTableLegend = () => (
   <p className="mt-2 text-small text-ink-2">
     Apart by = recomputed − claimed. A claim agrees when |apart| + <i>U</i> ≤ <i>T</i>, differs when |apart| − <i>U</i> &gt; <i>T</i>, and is unsettled between. <i>U</i> is that of
     the computation alone; what was chosen, or is not known from the files, decides coverage. Values are printed to the digits the tolerance needs; the result file has them all.{' '}
-    <a href="/methods">The rule in full</a>
+    <Link href="/methods">The rule in full</Link>
   </p>
 );

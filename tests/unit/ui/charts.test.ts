@@ -6,9 +6,9 @@ import { cursorGroup, panelsOf } from '@/app/_ui/charts/panels';
 import { plotSpec } from '@/app/_ui/charts/plot-options';
 import { readoutOf, steppedIndex } from '@/app/_ui/charts/readout';
 import { light } from '@/app/_ui/tokens';
-import { figureFixture } from './fixtures/result';
+import { figureFixture, must } from './fixtures/result';
 
-const figure = (kind: Figure['kind']): Figure => figureFixture.find((f) => f.kind === kind)!;
+const figure = (kind: Figure['kind']): Figure => must(figureFixture.find((f) => f.kind === kind));
 
 describe('panels of a figure', () => {
   it('put the residual and any other unit below, never on a second vertical axis', () => {
@@ -29,19 +29,19 @@ describe('panels of a figure', () => {
 describe('a plot’s options', () => {
   it('take colours from the theme in use: claimed solid orange, recomputed dashed blue where both run together', () => {
     const [main] = panelsOf(figure('waveforms'));
-    const { options } = plotSpec(figure('waveforms'), main!, light);
+    const { options } = plotSpec(figure('waveforms'), must(main), light);
     expect(options.series.slice(1).map((s) => s.stroke)).toEqual([light['trace-claimed'], light['trace-recomputed']]);
     expect(options.series.slice(1).map((s) => s.dash)).toEqual([undefined, [5, 3]]);
   });
   it('draw claimed values of a sweep as points on the curve, and the error band filled between its edges', () => {
     const [main] = panelsOf(figure('sweep'));
-    const { options, data } = plotSpec(figure('sweep'), main!, light);
-    const claimed = main!.series.findIndex((s) => s.role === 'claimed') + 1;
+    const { options, data } = plotSpec(figure('sweep'), must(main), light);
+    const claimed = must(main).series.findIndex((s) => s.role === 'claimed') + 1;
     expect(options.series[claimed]?.points).toMatchObject({ show: true });
     expect(options.series[claimed]?.width).toBe(0);
     const band = options.bands?.[0]?.series as [number, number];
-    expect(band.map((i) => main!.series[i - 1]?.role)).toEqual(['band-high', 'band-low']);
-    expect(data).toHaveLength(main!.series.length + 1);
+    expect(band.map((i) => must(main).series[i - 1]?.role)).toEqual(['band-high', 'band-low']);
+    expect(data).toHaveLength(must(main).series.length + 1);
   });
 });
 

@@ -5,7 +5,7 @@ import { ClaimTable } from '@/app/_ui/claim/claim-table';
 import { RecordPage } from '@/app/_ui/claim/record-page';
 import type { RecordView } from '@/app/_ui/claim/record-view';
 import { visiblePoints } from '@/app/_ui/claim/visible-points';
-import { recordFixture, resultFixture } from './fixtures/result';
+import { must, recordFixture, resultFixture } from './fixtures/result';
 
 const table = (view: RecordView, open: readonly string[] = []) => renderToStaticMarkup(createElement(ClaimTable, { view, open }));
 const rowsOf = (html: string, id: string) => html.slice(html.indexOf(`id="${id}"`)).split('</tr>')[0] ?? '';
@@ -86,7 +86,7 @@ describe('an opened claim', () => {
 });
 
 describe('a long sweep', () => {
-  const points = Array.from({ length: 201 }, (_, i) => ({ ...resultFixture.claims[0]!.points[2]!, verdict: i === 117 ? ('differs' as const) : ('agrees' as const), apart: i === 117 ? 0.1 : 1e-5 }));
+  const points = Array.from({ length: 201 }, (_, i) => ({ ...must(resultFixture.claims[0]?.points[2]), verdict: i === 117 ? ('differs' as const) : ('agrees' as const), apart: i === 117 ? 0.1 : 1e-5 }));
   it('shows both ends and the worst point among a few rows', () => {
     const shown = visiblePoints(201, points);
     expect(shown.length).toBeLessThanOrEqual(8);

@@ -5,16 +5,20 @@ import { drawGap } from '@/app/_ui/verdict/gap-gauge';
 import { coverageText } from '@/app/_ui/verdict/coverage-cell';
 import { budgetGroup } from '@/app/_ui/claim/budget-shares';
 import { formatAt, formatSetting, settingLabel } from '@/app/_ui/claim/setting-names';
+import { must } from './fixtures/result';
 import { decimalsThatPart } from '@/app/_ui/claim/route-table';
 
 /** Relative luminance and contrast of WCAG 2.2 (required: published; w3.org/TR/WCAG22, definition of contrast ratio). */
 function luminance(hex: string): number {
-  const [r, g, b] = [1, 3, 5].map((i) => Number.parseInt(hex.slice(i, i + 2), 16) / 255).map((c) => (c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4));
-  return 0.2126 * r! + 0.7152 * g! + 0.0722 * b!;
+  const linear = (i: number) => {
+    const c = Number.parseInt(hex.slice(i, i + 2), 16) / 255;
+    return c <= 0.04045 ? c / 12.92 : ((c + 0.055) / 1.055) ** 2.4;
+  };
+  return 0.2126 * linear(1) + 0.7152 * linear(3) + 0.0722 * linear(5);
 }
 const contrast = (a: string, b: string) => {
-  const [high, low] = [luminance(a), luminance(b)].sort((x, y) => y - x);
-  return (high! + 0.05) / (low! + 0.05);
+  const [one, other] = [luminance(a), luminance(b)];
+  return (Math.max(one, other) + 0.05) / (Math.min(one, other) + 0.05);
 };
 
 describe.each([['light', light], ['dark', dark]] as const)('the %s theme', (_name, theme: Palette) => {
@@ -60,7 +64,7 @@ describe('verdicts in words', () => {
 
 describe('the gap gauge', () => {
   it('places the value within the band of T and clamps beyond three T with an arrow', () => {
-    const inside = drawGap(0.5, 1, 0.1)!;
+    const inside = must(drawGap(0.5, 1, 0.1));
     expect(inside.at).toBeGreaterThan(inside.centre);
     expect(inside.at).toBeLessThan(inside.centre + inside.bandHalf);
     expect(drawGap(-40, 1, 0.1)).toMatchObject({ beyond: -1 });
