@@ -8,7 +8,8 @@ function rounded(values: Float64Array, digits: number): Float64Array {
   let scale = 10 ** (digits - 1);
   for (let i = 0; i < values.length; i++) {
     const size = Math.abs(values[i]!);
-    if (size === 0 || !Number.isFinite(size)) {
+    // Below 1e-280 the scale itself would overflow; such values weigh nothing beside any peak.
+    if (size < 1e-280 || !Number.isFinite(size)) {
       out[i] = values[i]!;
       continue;
     }
