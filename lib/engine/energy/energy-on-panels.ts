@@ -4,8 +4,11 @@ import { gaussRule } from '../routes/b/gauss-legendre';
 import { ENERGY_FACTOR, type ModeEnergy } from './energy-on-samples';
 import { floorOfMode } from './integration-floor';
 import type { RadiationRecord } from './radiation-record';
+import { largestTurns } from './sampling';
 
-const INTERVALS_A_PANEL = 8;
+/** A panel spans eight sample intervals, or as many more as turn the fastest phase by less than half a radian. */
+const LEAST_INTERVALS = 8;
+const RADIANS_A_PANEL = 0.5;
 const NODES_A_PANEL = 12;
 
 interface PanelNodes {
@@ -15,12 +18,12 @@ interface PanelNodes {
   readonly firstCounted: number;
 }
 
-/** Gauss panels over eight sample intervals each, with an edge at the start of the integral. */
-function panelNodes(axis: Float64Array, startM: number): PanelNodes {
+/** Gauss panels over some sample intervals each, with an edge at the start of the integral. */
+function panelNodes(axis: Float64Array, startM: number, intervals: number): PanelNodes {
   const last = axis.length - 1;
   const start = Math.max(startM, axis[0]!);
   const edges: number[] = [];
-  for (let i = 0; i < last; i += INTERVALS_A_PANEL) edges.push(axis[i]!);
+  for (let i = 0; i < last; i += intervals) edges.push(axis[i]!);
   edges.push(axis[last]!);
   if (start < axis[last]! && !edges.includes(start)) edges.push(start);
   edges.sort((a, b) => a - b);
@@ -48,18 +51,39 @@ const valuesOf = (re: Spline, im: Spline, t: Float64Array): ComplexValues => {
   return { re: a!, im: b! };
 };
 
-/** ∫ψ e^{−iωt}, split as cosine and sine moments of both parts, over the whole record. */
-function moments(psi: ComplexValues, nodes: PanelNodes, omega: number, t0: number) {
-  let [cr, ci, sr, si] = [0, 0, 0, 0];
-  for (let i = 0; i < nodes.t.length; i++) {
-    const c = Math.cos(omega * (nodes.t[i]! - t0)) * nodes.w[i]!;
-    const s = Math.sin(omega * (nodes.t[i]! - t0)) * nodes.w[i]!;
-    cr += c * psi.re[i]!;
-    ci += c * psi.im[i]!;
-    sr += s * psi.re[i]!;
-    si += s * psi.im[i]!;
+/** Cosines and sines of k times a base angle at every node, k = 0, 1, 2 …, by the addition theorem. */
+class Harmonics {
+  readonly cos: Float64Array;
+  readonly sin: Float64Array;
+  private readonly cos1: Float64Array;
+  private readonly sin1: Float64Array;
+
+  constructor(angles: Float64Array) {
+    this.cos1 = angles.map(Math.cos);
+    this.sin1 = angles.map(Math.sin);
+    this.cos = new Float64Array(angles.length).fill(1);
+    this.sin = new Float64Array(angles.length);
   }
-  return { cr, ci, sr, si };
+
+  next(): void {
+    const { cos, sin, cos1, sin1 } = this;
+    for (let i = 0; i < cos.length; i++) {
+      const c = cos[i]! * cos1[i]! - sin[i]! * sin1[i]!;
+      sin[i] = sin[i]! * cos1[i]! + cos[i]! * sin1[i]!;
+      cos[i] = c;
+    }
+  }
+}
+
+/** Σ w·g·ψ for a real weight function g at the nodes. */
+function moment(psi: ComplexValues, w: Float64Array, g: Float64Array): readonly [re: number, im: number] {
+  let [re, im] = [0, 0];
+  for (let i = 0; i < w.length; i++) {
+    const weight = w[i]! * g[i]!;
+    re += weight * psi.re[i]!;
+    im += weight * psi.im[i]!;
+  }
+  return [re, im];
 }
 
 /**
@@ -73,27 +97,24 @@ function newsOnNodes(mode: Mode, basis: SplineBasis, axis: Float64Array, nodes: 
   const news = valuesOf(antiderivativeOf(sre), antiderivativeOf(sim), nodes.t);
   const t0 = axis[0]!;
   const period = 2 * (axis[axis.length - 1]! - t0);
-  const all = moments(psi, nodes, 0, t0);
-  let [firstRe, firstIm] = [0, 0];
-  for (let i = 0; i < nodes.t.length; i++) {
-    firstRe += nodes.w[i]! * (nodes.t[i]! - t0) * psi.re[i]!;
-    firstIm += nodes.w[i]! * (nodes.t[i]! - t0) * psi.im[i]!;
-  }
-  for (let i = 0; i < nodes.t.length; i++) {
-    const t = nodes.t[i]! - t0;
+  const times = nodes.t.map((t) => t - t0);
+  const harmonics = new Harmonics(times.map((t) => (2 * Math.PI * t) / period));
+  const [wholeRe, wholeIm] = moment(psi, nodes.w, harmonics.cos);
+  const [firstRe, firstIm] = moment(psi, nodes.w, times);
+  for (let i = 0; i < times.length; i++) {
     // The frequency ω = 0 itself is divided by +iω₀.
-    news.re[i] = news.re[i]! - all.cr / 2 - (t * all.cr - firstRe) / period + all.ci / (period * floor);
-    news.im[i] = news.im[i]! - all.ci / 2 - (t * all.ci - firstIm) / period - all.cr / (period * floor);
+    news.re[i] = news.re[i]! - wholeRe / 2 - (times[i]! * wholeRe - firstRe) / period + wholeIm / (period * floor);
+    news.im[i] = news.im[i]! - wholeIm / 2 - (times[i]! * wholeIm - firstIm) / period - wholeRe / (period * floor);
   }
   for (let k = 1; (2 * Math.PI * k) / period < floor; k++) {
-    const omega = (2 * Math.PI * k) / period;
-    const size = (2 / period) * (1 / floor - 1 / omega);
-    const { cr, ci, sr, si } = moments(psi, nodes, omega, t0);
-    for (let i = 0; i < nodes.t.length; i++) {
-      const c = size * Math.cos(omega * (nodes.t[i]! - t0));
-      const s = size * Math.sin(omega * (nodes.t[i]! - t0));
-      news.re[i] = news.re[i]! + s * cr - c * sr;
-      news.im[i] = news.im[i]! + s * ci - c * si;
+    harmonics.next();
+    const { cos, sin } = harmonics;
+    const size = (2 / period) * (1 / floor - period / (2 * Math.PI * k));
+    const [cr, ci] = moment(psi, nodes.w, cos);
+    const [sr, si] = moment(psi, nodes.w, sin);
+    for (let i = 0; i < times.length; i++) {
+      news.re[i] = news.re[i]! + size * (sin[i]! * cr - cos[i]! * sr);
+      news.im[i] = news.im[i]! + size * (sin[i]! * ci - cos[i]! * si);
     }
   }
   return news;
@@ -115,7 +136,8 @@ function newsOf(mode: Mode, record: RadiationRecord, basis: SplineBasis, nodes: 
  * Source: Q12; rule 2.9; the kernel is our derivation from Σ sin kx/k = (π − x)/2.
  */
 export function energyOnPanels(record: RadiationRecord, startM: number, floor: number): ModeEnergy[] {
-  const nodes = panelNodes(record.axis, startM);
+  const intervals = Math.max(LEAST_INTERVALS, Math.floor(RADIANS_A_PANEL / Math.max(largestTurns(record).aStep, 1e-3)));
+  const nodes = panelNodes(record.axis, startM, intervals);
   const basis = splineBasis(record.axis);
   return record.modes.map((mode) => {
     const { re, im } = newsOf(mode, record, basis, nodes, floor);

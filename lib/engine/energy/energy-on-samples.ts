@@ -25,7 +25,7 @@ function weightedSum(weights: Float64Array, values: Float64Array): number {
  * Source: Q12; Ruiz et al. 2008, arXiv:0707.4654.
  */
 export function energyOnSamples(fluxes: Fluxes, startM: number, order: 4 | 6 | 8 = 8): ModeEnergy[] {
-  const weights = quadratureWeights(fluxes.axis, startM, order);
+  const weights = quadratureWeights(fluxes.axis, startM, order, fluxes.isEven);
   return fluxes.perMode.map(({ l, m, power }) => ({ l, m, energy: ENERGY_FACTOR * weightedSum(weights, power) }));
 }
 

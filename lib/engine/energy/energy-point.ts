@@ -68,7 +68,7 @@ function roundingOf(record: RadiationRecord, fluxes: Fluxes, startM: number, dig
   const relative = (0.5 * 10 ** (1 - digits)) / Math.sqrt(3);
   const { noiseGain } = fluxes;
   if (noiseGain === null) return 2 * relative * total;
-  const weights = quadratureWeights(fluxes.axis, startM, 8);
+  const weights = quadratureWeights(fluxes.axis, startM, 8, fluxes.isEven);
   let [variance, bias] = [0, 0];
   record.modes.forEach(({ re, im }, k) => {
     const power = fluxes.perMode[k]!.power;

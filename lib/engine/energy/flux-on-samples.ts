@@ -4,6 +4,7 @@ import { interpolatePair } from '../series/local-interpolation';
 import { floorOfMode } from './integration-floor';
 import { derivativesAtSamples } from './local-calculus';
 import type { RadiationRecord } from './radiation-record';
+import { largestTurns } from './sampling';
 
 /** How route A works: each entry is a knob of its own error bar. */
 export interface SampleNumerics {
@@ -15,9 +16,13 @@ export interface SampleNumerics {
 
 export const houseSamples: SampleNumerics = { stencil: 13, interpolation: 8, refinements: 1 };
 
+/** Finer steps than this turn of the fastest phase add nothing before ψ4 is transformed. */
+const RESOLVED_RAD = 0.1;
+
 /** |Ḣ|² of each mode on one axis. */
 export interface Fluxes {
   readonly axis: Float64Array;
+  readonly isEven: boolean;
   readonly perMode: readonly { readonly l: number; readonly m: number; readonly power: Float64Array }[];
   /** Standard deviation of ℜḢ for samples with unit scatter; null when Ḣ was not differentiated. */
   readonly noiseGain: Float64Array | null;
@@ -68,19 +73,21 @@ function newsFromPsi4(mode: Mode, axis: Float64Array, floor: number, points: num
  */
 export function fluxOnSamples(record: RadiationRecord, floor: number, numerics: SampleNumerics): Fluxes {
   const { axis, modes, variable } = record;
-  if (variable === 'news') return { axis, perMode: modes.map(({ l, m, re, im }) => ({ l, m, power: squared(re, im) })), noiseGain: null };
+  const isEven = record.step !== null;
+  if (variable === 'news') return { axis, isEven, perMode: modes.map(({ l, m, re, im }) => ({ l, m, power: squared(re, im) })), noiseGain: null };
   if (variable === 'strain') {
-    const { slopes, noiseGain } = derivativesAtSamples(axis, modes.flatMap(({ re, im }) => [re, im]), numerics.stencil);
+    const { slopes, noiseGain } = derivativesAtSamples(axis, modes.flatMap(({ re, im }) => [re, im]), numerics.stencil, isEven);
     const perMode = modes.map(({ l, m }, k) => ({ l, m, power: squared(slopes[2 * k]!, slopes[2 * k + 1]!) }));
-    return { axis, perMode, noiseGain };
+    return { axis, isEven, perMode, noiseGain };
   }
-  const points = powerOfTwoFrom(axis.length - 1) * 2 ** numerics.refinements;
   const span = axis[axis.length - 1]! - axis[0]!;
+  const resolved = powerOfTwoFrom((span * largestTurns(record).inTime) / RESOLVED_RAD);
+  const points = Math.max(256, Math.min(powerOfTwoFrom(axis.length - 1), resolved)) * 2 ** numerics.refinements;
   const fine = Float64Array.from({ length: points + 1 }, (_, i) => axis[0]! + (i * span) / points);
   const perMode = modes.map((mode) => ({
     l: mode.l,
     m: mode.m,
     power: newsFromPsi4(mode, axis, floorOfMode(floor, mode.m), points, numerics.interpolation),
   }));
-  return { axis: fine, perMode, noiseGain: null };
+  return { axis: fine, isEven: true, perMode, noiseGain: null };
 }

@@ -38,15 +38,19 @@ function stencilAt(i: number, n: number, wanted: number): readonly [from: number
  * Fails:  never for two samples or more.
  * Source: Fornberg 1988, Math. Comp. 51, 699 [from memory].
  */
-export function derivativesAtSamples(axis: Float64Array, series: readonly Float64Array[], points: number): { slopes: Float64Array[]; noiseGain: Float64Array } {
+export function derivativesAtSamples(axis: Float64Array, series: readonly Float64Array[], points: number, isEven = false): { slopes: Float64Array[]; noiseGain: Float64Array } {
   const n = axis.length;
   const slopes = series.map(() => new Float64Array(n));
   const noiseGain = new Float64Array(n);
   const value = new Float64Array(points);
   const slope = new Float64Array(points);
+  let inside = false;
   for (let i = 0; i < n; i++) {
     const [from, count] = stencilAt(i, n, points);
-    fornberg(axis[i]!, axis, from, count, value, slope);
+    const centred = isEven && count === points && 2 * (i - from) === count - 1;
+    // On equal steps one centred stencil serves all.
+    if (!(centred && inside)) fornberg(axis[i]!, axis, from, count, value, slope);
+    inside = centred;
     let gain = 0;
     for (let j = 0; j < count; j++) gain += slope[j]! * slope[j]!;
     noiseGain[i] = Math.sqrt(gain);
@@ -75,22 +79,33 @@ const GAUSS: Readonly<Record<number, readonly (readonly [x: number, w: number])[
  * Fails:  never for two samples or more.
  * Source: Gauss rules on Fornberg's interpolation; our assembly.
  */
-export function quadratureWeights(axis: Float64Array, start: number, wanted: 4 | 6 | 8): Float64Array {
+export function quadratureWeights(axis: Float64Array, start: number, wanted: 4 | 6 | 8, isEven = false): Float64Array {
   const n = axis.length;
   const weights = new Float64Array(n);
   const points = Math.min(wanted, n);
-  const rule = GAUSS[wanted]!;
-  const value = new Float64Array(points);
-  const slope = new Float64Array(points);
+  const share = new Float64Array(points);
+  let inside = false;
   for (let i = 0; i + 1 < n; i++) {
     const low = Math.max(axis[i]!, start);
     const width = axis[i + 1]! - low;
     if (!(width > 0)) continue;
-    const from = Math.max(0, Math.min(i + 1 - (points >> 1), n - points));
-    for (const [x, w] of rule) {
-      fornberg(low + x * width, axis, from, points, value, slope);
-      for (let j = 0; j < points; j++) weights[from + j] = weights[from + j]! + w * width * value[j]!;
-    }
+    const wantedFrom = i + 1 - (points >> 1);
+    const from = Math.max(0, Math.min(wantedFrom, n - points));
+    const centred = isEven && from === wantedFrom && low === axis[i]!;
+    if (!(centred && inside)) intervalShares(axis, from, low, width, GAUSS[wanted]!, share);
+    inside = centred;
+    for (let j = 0; j < points; j++) weights[from + j] = weights[from + j]! + share[j]!;
   }
   return weights;
+}
+
+/** What each sample of a stencil receives of the integral over one interval. */
+function intervalShares(axis: Float64Array, from: number, low: number, width: number, rule: readonly (readonly [number, number])[], share: Float64Array): void {
+  const value = new Float64Array(share.length);
+  const slope = new Float64Array(share.length);
+  share.fill(0);
+  for (const [x, w] of rule) {
+    fornberg(low + x * width, axis, from, share.length, value, slope);
+    for (let j = 0; j < share.length; j++) share[j] = share[j]! + w * width * value[j]!;
+  }
 }

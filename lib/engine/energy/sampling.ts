@@ -16,6 +16,32 @@ const COUNTS = 1e-3;
 /** Phases of samples below this share of a mode's peak are noise. */
 const AUDIBLE = 0.1;
 
+/** Modes whose peak is below this share of the largest do not decide how finely a record is read. */
+const LOUD = 1e-2;
+
+const turnOf = (re: Float64Array, im: Float64Array, i: number): number =>
+  Math.abs(Math.atan2(im[i]! * re[i - 1]! - re[i]! * im[i - 1]!, re[i]! * re[i - 1]! + im[i]! * im[i - 1]!));
+
+/** Largest turn of phase between neighbouring samples (rad a step) and in time (rad/M), in loud modes where they are audible. */
+export function largestTurns(record: RadiationRecord): { readonly aStep: number; readonly inTime: number } {
+  const { axis, modes } = record;
+  const peaks = modes.map(({ re, im }) => peakModulus(re, im));
+  const top = Math.max(0, ...peaks);
+  let [aStep, inTime] = [0, 0];
+  modes.forEach(({ re, im }, k) => {
+    if (!(peaks[k]! > LOUD * top)) return;
+    const floor = (AUDIBLE * peaks[k]!) ** 2;
+    for (let i = 1; i < axis.length; i++) {
+      if (re[i]! * re[i]! + im[i]! * im[i]! < floor || re[i - 1]! * re[i - 1]! + im[i - 1]! * im[i - 1]! < floor) continue;
+      const turn = turnOf(re, im, i);
+      if (turn > aStep) aStep = turn;
+      const rate = turn / (axis[i]! - axis[i - 1]!);
+      if (rate > inTime) inTime = rate;
+    }
+  });
+  return { aStep, inTime };
+}
+
 /** The fewest samples to a period among modes that matter, and where. */
 export function coarsestSampling(record: RadiationRecord, energies: readonly ModeEnergy[]): CoarsestSampling | null {
   const { axis } = record;
@@ -27,8 +53,7 @@ export function coarsestSampling(record: RadiationRecord, energies: readonly Mod
     const floor = AUDIBLE * peakModulus(re, im);
     for (let i = 1; i < axis.length; i++) {
       if (Math.hypot(re[i]!, im[i]!) < floor || Math.hypot(re[i - 1]!, im[i - 1]!) < floor) continue;
-      const turn = Math.abs(Math.atan2(im[i]! * re[i - 1]! - re[i]! * im[i - 1]!, re[i]! * re[i - 1]! + im[i]! * im[i - 1]!));
-      const samplesPerPeriod = (2 * Math.PI) / turn;
+      const samplesPerPeriod = (2 * Math.PI) / turnOf(re, im, i);
       if (found === null || samplesPerPeriod < found.samplesPerPeriod) {
         const stepM = axis[i]! - axis[i - 1]!;
         found = { l, m, samplesPerPeriod, stepM, periodM: samplesPerPeriod * stepM, atM: axis[i]! };

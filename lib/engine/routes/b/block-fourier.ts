@@ -80,13 +80,27 @@ function fold(pair: UniformPair, blocks: number): Folded {
   return { blocks, half, parts };
 }
 
+/** cos and sin of θ(i + ½): rotated step by step, taken anew every 32 so that rounding stays below 1e-14. */
+function rotations(theta: number, n: number, cosines: Float64Array, sines: Float64Array): void {
+  const [c1, s1] = [Math.cos(theta), Math.sin(theta)];
+  for (let from = 0; from < n; from += 32) {
+    let c = Math.cos(theta * (from + 0.5));
+    let s = Math.sin(theta * (from + 0.5));
+    const to = Math.min(from + 32, n);
+    for (let i = from; i < to; i++) {
+      cosines[i] = c;
+      sines[i] = s;
+      const next = c * c1 - s * s1;
+      s = c * s1 + s * c1;
+      c = next;
+    }
+  }
+}
+
 /** Transforms of every block about its own middle at one frequency, into row k of `local`. */
 function blockSums(folded: Folded, theta: number, k: number, local: Float64Array, cosines: Float64Array, sines: Float64Array): void {
   const { blocks, half, parts } = folded;
-  for (let i = 0; i < half; i++) {
-    cosines[i] = Math.cos(theta * (i + 0.5));
-    sines[i] = Math.sin(theta * (i + 0.5));
-  }
+  rotations(theta, half, cosines, sines);
   for (let b = 0; b < blocks; b++) {
     const base = b * 4 * half;
     let xc = 0;

@@ -1,5 +1,5 @@
 import type { Side } from '../../contract/route';
-import type { Mode, Waveform } from '../../contract/waveform';
+import type { Waveform } from '../../contract/waveform';
 import { spinWeightedHarmonic } from '../../modes/spin-weighted-harmonic';
 import { evaluateSplines, fitSpline, splineBasis, type SplineBasis } from './banded-spline';
 import { addRotated, derivativeOrder, emptySpectrum, integrateAndScale, type ModeSpectrum, type Source, type Spectrum } from './spectrum';
@@ -60,8 +60,7 @@ function delays(part: Part, axis: Float64Array): number[] {
 function partsOf(waveform: Waveform): Part[] {
   const { content } = waveform;
   if (content.kind === 'modes') {
-    const negative = (mode: Mode): boolean => (mode as Mode & { atNegativeFrequencies?: boolean }).atNegativeFrequencies === true;
-    return content.modes.map((mode) => ({ ...mode, atNegative: negative(mode) }));
+    return content.modes.map((mode) => ({ ...mode, atNegative: mode.atNegativeFrequencies === true }));
   }
   const zeros = new Float64Array(waveform.axis.length);
   const plus = { l: 0, m: 0, re: content.plus, im: content.plusIm ?? zeros, atNegative: false };
