@@ -40,6 +40,9 @@ export const DOORS = {
   'action compose.revise': ['submission.revise'],
   'action compose.withdraw': ['submission.withdraw'],
   'action compose.requestVariation': ['submission.vary'],
+  'action compose.addCoAuthor': ['submission.manage-people'],
+  'action compose.removeCoAuthor': ['submission.manage-people'],
+  'action compose.confirmAuthorship': ['submission.confirm-authorship'],
 } as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;
 
 /** An id that is in no table does not compile in the wrappers. Pages stand in `page-doors.ts`. */

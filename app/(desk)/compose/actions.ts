@@ -2,6 +2,7 @@
 import { z } from 'zod';
 import { defineAction } from '@/lib/http/define-action';
 import { removeFile as remove } from '@/lib/services/files/remove-file';
+import { addCoAuthor as addAuthor, confirmAuthorship as confirm, removeCoAuthor as removeAuthor } from '@/lib/services/submissions/change-people';
 import { checkDraft } from '@/lib/services/submissions/check-draft';
 import { createDraft as create } from '@/lib/services/submissions/create-draft';
 import { loadSheet as load } from '@/lib/services/submissions/load-sheet';
@@ -56,3 +57,18 @@ export const requestVariation = defineAction({
   input: z.strictObject({ id, variation: variationInput }),
   handle: ({ actor, input }) => vary(actor, input.id, input.variation),
 });
+
+export const addCoAuthor = defineAction({
+  door: 'action compose.addCoAuthor',
+  input: z.strictObject({ id, email: z.email('an e-mail address').max(254) }),
+  rate: { points: 30, perS: 3600 },
+  handle: ({ actor, input }) => addAuthor(actor, input.id, { email: input.email }),
+});
+
+export const removeCoAuthor = defineAction({
+  door: 'action compose.removeCoAuthor',
+  input: z.strictObject({ id, userId: id }),
+  handle: ({ actor, input }) => removeAuthor(actor, input.id, { userId: input.userId }),
+});
+
+export const confirmAuthorship = defineAction({ door: 'action compose.confirmAuthorship', input: onlyId, handle: ({ actor, input }) => confirm(actor, input.id) });

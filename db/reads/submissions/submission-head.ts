@@ -23,7 +23,7 @@ export async function getSubmissionHead(reader: Reader, submissionId: string) {
 /** In printed order. */
 export const listAuthors = (reader: Reader, submissionId: string) =>
   reader
-    .select({ name: users.name, affiliation: users.affiliation, role: submissionPeople.role, confirmedAt: submissionPeople.confirmedAt })
+    .select({ userId: users.id, name: users.name, affiliation: users.affiliation, role: submissionPeople.role, confirmedAt: submissionPeople.confirmedAt })
     .from(submissionPeople)
     .innerJoin(users, eq(users.id, submissionPeople.userId))
     .where(eq(submissionPeople.submissionId, submissionId))

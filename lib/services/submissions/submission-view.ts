@@ -26,6 +26,8 @@ export interface FileView {
 }
 
 export interface AuthorView {
+  /** For authors alone, so that they can take a co-author off. */
+  readonly userId?: string;
   readonly name: string;
   readonly affiliation: string | null;
   readonly role: 'author' | 'co-author';

@@ -23,7 +23,7 @@ export async function viewHead(reader: Reader, actor: Actor, facts: SubmissionFa
     round: head.round,
     currentRevision: head.currentRevision,
     stateChangedAt: sideOf(actor, facts) === 'editor' ? head.stateChangedAt.toISOString() : dayOnly(head.stateChangedAt),
-    authors: authors.map((a): AuthorView => ({ name: a.name, affiliation: a.affiliation, role: a.role, confirmed: a.confirmedAt !== null })),
+    authors: authors.map((a): AuthorView => ({ ...(facts.authorship && { userId: a.userId }), name: a.name, affiliation: a.affiliation, role: a.role, confirmed: a.confirmedAt !== null })),
     may: whatIsAllowed(actor, facts),
   };
 }
