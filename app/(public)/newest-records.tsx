@@ -11,7 +11,7 @@ import { RegisterTable } from './register/register-table';
 export async function NewestRecord({ actor, row }: { readonly actor: Actor; readonly row: RegisterRow | undefined }) {
   const record = row ? await getRecord(actor, row.id) : null;
   if (!record?.ok) return <EmptyTicket />;
-  const view = recordAsView(record.value, null, {});
+  const view = recordAsView(record.value, null);
   return (
     <div className="meets">
       <ClaimTable view={{ ...view, claims: view.claims.slice(0, 3) }} closed />

@@ -1,11 +1,12 @@
 import type { DecisionView, RecordView, ReportView } from '@/app/_ui/claim/record-view';
-import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
+import type { ResultDocument } from '@/lib/pipeline/result';
 import type { RecordDocument } from '@/lib/badges/record';
 import { RECOMMENDATION_WORDS, REPORT_QUESTIONS } from '@/lib/reviews/report';
 import type { RecordView as PublishedRecord } from '@/lib/services/records/record-view';
 import type { ReportView as HandedIn } from '@/lib/services/reviews/report-view';
 import type { LodgedView } from '@/lib/services/submissions/submission-view';
 import { formatDay } from './dates';
+import { figuresHref } from './figures-href';
 import { headingsOfResult } from './sheet-headings';
 
 /** What was signed, in the shape of a result: the page shows the record's own numbers and no others. */
@@ -45,8 +46,8 @@ const historyOf = (record: PublishedRecord, lodged: LodgedView | null): RecordVi
   ...(record.standing === 'entered' ? [] : [{ on: formatDay(record.standingSince), text: record.standingReason || record.standing }]),
 ];
 
-/** A published record. `lodged` adds the statement and the names in the sheet, `figures` the curves; the numbers are the signed ones. */
-export function recordAsView(record: PublishedRecord, lodged: LodgedView | null, figures: FiguresByClaim): RecordView {
+/** A published record. `lodged` adds the statement, the names in the sheet and the curves; the numbers are the signed ones. */
+export function recordAsView(record: PublishedRecord, lodged: LodgedView | null): RecordView {
   const { document } = record;
   const digest = document.resultDigest;
   const affiliationOf = (name: string) => lodged?.authors.find((author) => author.name === name)?.affiliation ?? null;
@@ -64,7 +65,8 @@ export function recordAsView(record: PublishedRecord, lodged: LodgedView | null,
     claims: headingsOfResult(document.claims, lodged?.revision.sheet.claims ?? []),
     run: { state: 'done', finishedOn: lodged?.run?.state === 'measured' ? formatDay(lodged.run.finishedAt) : null, resultSha256: digest },
     result: resultOf(document),
-    figures,
+    figures: {},
+    figuresHref: lodged?.run ? figuresHref(record.submissionId, lodged.run.id) : null,
     logs: {},
     statement: lodged?.revision.statement || null,
     decision: decisionOf(record),

@@ -3,6 +3,7 @@ import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { DraftView, LodgedView, RunView } from '@/lib/services/submissions/submission-view';
 import { formatDay } from './dates';
+import { figuresHref } from './figures-href';
 import { headingsOfResult, headingsOfSheet } from './sheet-headings';
 
 /** How a run stands, in the component's words. */
@@ -46,6 +47,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     run: runAsView(run),
     result,
     figures: extra.figures ?? {},
+    figuresHref: run?.state === 'measured' ? figuresHref(submission.id, run.id) : null,
     logs: {},
     statement: revision.statement || null,
     decision: null,

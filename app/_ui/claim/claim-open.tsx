@@ -8,6 +8,8 @@ interface OpenState {
 }
 const Open = createContext<OpenState>({ open: true, toggle: () => undefined });
 
+export const useClaimOpen = (): boolean => useContext(Open).open;
+
 /** Holds whether one claim is open. An address that ends in the claim's id (`#C2`) opens it. */
 export function ClaimOpenState({ claimId, initially, children }: { readonly claimId: string; readonly initially: boolean; readonly children: ReactNode }) {
   const [open, setOpen] = useState(initially);

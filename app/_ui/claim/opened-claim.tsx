@@ -1,12 +1,14 @@
 import type { ReactNode } from 'react';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import { ClaimPlots } from '../charts/claim-plots';
+import { figuresAt, type FigurePlace } from '../charts/figure-place';
 import { Formula } from '../math/formula';
 import { BudgetTable } from './budget-table';
 import { OpenedRow } from './claim-open';
 import { PerfCell } from './claim-table';
 import { FileList } from './file-list';
 import { FindingItem } from './finding-item';
+import { PlotsOfClaim } from './plots-of-claim';
 import { PointTable } from './point-table';
 import type { ClaimHeading, RecordSlots, RecordView } from './record-view';
 import { RouteTable } from './route-table';
@@ -33,8 +35,8 @@ export function Part({ title, children }: { readonly title: ReactNode; readonly 
 /** Everything behind a number: what was declared at the left, what came of it at the right, then across both. */
 export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimProps) {
   const figures = view.figures[claim.id] ?? [];
-  const beside = figures.filter((figure) => figure.kind === 'waveforms' || figure.kind === 'sweep');
-  const below = figures.filter((figure) => figure.kind !== 'waveforms' && figure.kind !== 'sweep');
+  const plots = (place: FigurePlace) =>
+    figures.length === 0 && view.figuresHref ? <PlotsOfClaim claimId={claim.id} href={view.figuresHref} place={place} /> : <ClaimPlots claimId={claim.id} figures={figuresAt(place, figures)} />;
   const files = (view.result?.files ?? []).filter((file) => !heading.files || heading.files.includes(file.name));
   return (
     <>
@@ -53,14 +55,15 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
         </div></td>
         <PerfCell />
         <td className="r" role="cell" colSpan={5}><div className="grid gap-6">
-          <ClaimPlots claimId={claim.id} figures={beside} empty={below.length === 0} />
+          {plots('beside')}
+          {figures.length === 0 && !view.figuresHref && <p className="text-ui text-ink-2">No figures were kept for this run.</p>}
           {heading.points.length > claim.points.length || claim.points.length > 8 ? <Part title={`All ${claim.points.length} points`}><PointTable claim={claim} heading={heading} /></Part> : null}
         </div></td>
       </OpenedRow>
       <OpenedRow id={ids[1] ?? `${claim.id}-more`} across>
         <td role="cell" colSpan={10}>
           <div className="grid grid-cols-1 gap-x-10 gap-y-8 mid:grid-cols-2">
-            {below.length > 0 && <div className="grid min-w-0 content-start gap-6"><ClaimPlots claimId={claim.id} figures={below} /></div>}
+            <div className="grid min-w-0 content-start gap-6 empty:hidden">{plots('below')}</div>
             {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /></Part>}
             <Part title="Two routes"><RouteTable claim={claim} /></Part>
             <Part title="Findings">

@@ -96,7 +96,10 @@ export interface RecordView {
   readonly claims: readonly ClaimHeading[];
   readonly run: RunView;
   readonly result: ResultDocument | null;
+  /** Curves that come with the page; without them `figuresHref` is asked when a claim is opened. */
   readonly figures: FiguresByClaim;
+  /** Address that answers `{ figures: FiguresByClaim }`. */
+  readonly figuresHref?: string | null;
   /** Run log by claim id; `''` for the whole run. */
   readonly logs: Readonly<Record<string, string>>;
   /** Markdown with maths. */

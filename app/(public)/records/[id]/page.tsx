@@ -5,7 +5,6 @@ import { recordAsView } from '@/app/views/record-as-view';
 import { loadActor, orNotFound } from '@/lib/http/page-guard';
 import type { Actor } from '@/lib/policy/actor';
 import { getRecord } from '@/lib/services/records/get-record';
-import { getFigures } from '@/lib/services/runs/list-runs';
 import { getPublic } from '@/lib/services/submissions/get-lodged';
 import { BadgeCard, RecordActions } from './record-aside';
 
@@ -24,18 +23,16 @@ export async function generateMetadata({ params }: RecordProps): Promise<Metadat
   return { title: document.title, alternates: { types: { 'application/json': links.json, 'image/svg+xml': links.badge } } };
 }
 
-/** The statement and the curves lie with the submission; the record stands without them, should they be out of reach. */
+/** The statement lies with the submission; the record stands without it, should it be out of reach. */
 async function loadBehind(actor: Actor, submissionId: string, revision: number) {
   const lodged = await getPublic(actor, submissionId, revision);
-  if (!lodged.ok) return { lodged: null, figures: {} };
-  const figures = lodged.value.run ? await getFigures(actor, submissionId, lodged.value.run.id) : null;
-  return { lodged: lodged.value, figures: figures?.ok ? figures.value.figures : {} };
+  return lodged.ok ? lodged.value : null;
 }
 
 export default async function PublishedRecordPage({ params }: RecordProps) {
   const { id } = await params;
   const record = orNotFound(await readRecord(id));
-  const { lodged, figures } = await loadBehind(await loadActor(), record.submissionId, record.document.revision);
+  const lodged = await loadBehind(await loadActor(), record.submissionId, record.document.revision);
   const slots = { actions: <RecordActions record={record} />, aside: <BadgeCard record={record} /> };
-  return <RecordPage view={recordAsView(record, lodged, figures)} trail={{ href: '/register', label: 'Register' }} slots={slots} />;
+  return <RecordPage view={recordAsView(record, lodged)} trail={{ href: '/register', label: 'Register' }} slots={slots} />;
 }
