@@ -5,6 +5,7 @@ import { moveSubmission } from '@/db/writes/submissions/move-submission';
 import { isUuid } from '@/lib/kernel/uuid';
 import { ok } from '@/lib/kernel/result';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
+import { mayGenerally } from '@/lib/policy/grant';
 import { follow } from '@/lib/reviews/transitions';
 import { actOnSubmission } from '@/lib/services/act';
 import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
@@ -20,6 +21,8 @@ export const NO_CONFLICT_STATEMENT = 'I have no conflict of interest with the au
 
 /** Accepting opens the package; the first acceptance begins the review. */
 export async function answerInvitation(actor: Actor, invitationId: string, answer: InvitationAnswer): Promise<Outcome<{ readonly submissionId: string }>> {
+  const known = mayGenerally('review.list-own', actor);
+  if (!known.ok) return known;
   const invitation = isUuid(invitationId) ? await findInvitation(database(), invitationId) : undefined;
   if (!invitation || invitation.refereeId !== userIdOf(actor)) return { ok: false, error: NOT_FOUND };
   if (answer.accept && !answer.noConflict)

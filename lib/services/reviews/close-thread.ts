@@ -5,6 +5,7 @@ import { closeThread as writeClosing } from '@/db/writes/reviews/threads';
 import { ok } from '@/lib/kernel/result';
 import { isUuid } from '@/lib/kernel/uuid';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
+import { mayGenerally } from '@/lib/policy/grant';
 import { mayClose, mayRead, type Closing } from '@/lib/reviews/threads';
 import { actOnSubmission } from '@/lib/services/act';
 import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
@@ -12,6 +13,8 @@ import { sideOf } from './side';
 
 /** Resolved by the opener or the editor, overruled by the editor, or moot after a revision. */
 export async function closeThread(actor: Actor, threadId: string, closing: Closing): Promise<Outcome<null>> {
+  const known = mayGenerally('review.list-own', actor);
+  if (!known.ok) return known;
   const found = isUuid(threadId) ? await findThread(database(), threadId) : undefined;
   if (!found) return { ok: false, error: NOT_FOUND };
   const { submissionId } = found;

@@ -4,6 +4,7 @@ import { addComment, moveOpenThread } from '@/db/writes/reviews/threads';
 import { ok } from '@/lib/kernel/result';
 import { isUuid } from '@/lib/kernel/uuid';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
+import { mayGenerally } from '@/lib/policy/grant';
 import { isOpen, mayRead, stateAfterReply } from '@/lib/reviews/threads';
 import { actOnSubmission } from '@/lib/services/act';
 import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
@@ -18,6 +19,8 @@ export interface Reply {
 
 /** A further comment. From the authors it answers; from the other side it asks again. */
 export async function replyToThread(actor: Actor, threadId: string, reply: Reply): Promise<Outcome<{ readonly commentId: string }>> {
+  const known = mayGenerally('review.list-own', actor);
+  if (!known.ok) return known;
   const found = isUuid(threadId) ? await findThread(database(), threadId) : undefined;
   if (!found) return { ok: false, error: NOT_FOUND };
   const { submissionId } = found;
