@@ -63,7 +63,8 @@ function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weig
   if (most < 1) return;
   const centred = -(most >> 1);
   // Stencil bins are inside + direction × (offset + j): keep all of them between low and high.
-  const offset = direction > 0 ? clamp(centred, low - inside, high - inside - most + 1) : clamp(centred, inside - high, inside - low - most + 1);
+  const offset =
+    direction > 0 ? clamp(centred, low - inside, high - inside - most + 1) : clamp(centred, inside - high, inside - low - most + 1);
   edgeRule(most, offset).weightsAt(Math.abs(inside - place), b.share);
   const doubtful = !isKink;
   for (let j = 0; j < most; j++) {
@@ -97,7 +98,8 @@ function addKinks(b: Builder): void {
     if (f <= range.fLowHz) continue;
     const step = range.dfHz / f;
     const lnF = Math.log(f);
-    const ratio = (side: 1 | -1): number => Math.abs(Math.log(weigher.continuedAt(i, side, lnF + step) / weigher.continuedAt(i, side, lnF)));
+    const ratio = (side: 1 | -1): number =>
+      Math.abs(Math.log(weigher.continuedAt(i, side, lnF + step) / weigher.continuedAt(i, side, lnF)));
     const [above, below] = [ratio(1), ratio(-1)];
     if ((above + below) * step < LEAST_KINK || above + below === 0) continue;
     const order = kinkOrder(Math.max(above, below), range.order);
@@ -179,14 +181,18 @@ export function glanceAtEdges(weigher: NoiseWeigher, range: BinRange): Glance | 
   addEdges(b);
   const { inLow, inHigh } = frame;
   const every = Math.max(GLANCE_RUN, Math.floor((inHigh - inLow + 1) / GLANCE_RUNS));
-  const starts = Array.from({ length: Math.max(0, Math.floor((inHigh - inLow + 1 - GLANCE_RUN) / every) + 1) }, (_, i) => inLow + i * every);
+  const starts = Array.from(
+    { length: Math.max(0, Math.floor((inHigh - inLow + 1 - GLANCE_RUN) / every) + 1) },
+    (_, i) => inLow + i * every,
+  );
   const values = new Float64Array(GLANCE_RUN * starts.length);
   const logs = logBins(frame.last);
   const offset = Math.log(range.dfHz);
   starts.forEach((k, i) => weigher.fill(values.subarray(GLANCE_RUN * i, GLANCE_RUN * (i + 1)), logs, k, k + GLANCE_RUN - 1, offset));
   const sum = (power: Float64Array): number => {
     let total = 0;
-    for (let i = 0; i < starts.length; i++) for (let j = 0; j < GLANCE_RUN; j++) total += values[GLANCE_RUN * i + j]! * power[starts[i]! + j]!;
+    for (let i = 0; i < starts.length; i++)
+      for (let j = 0; j < GLANCE_RUN; j++) total += values[GLANCE_RUN * i + j]! * power[starts[i]! + j]!;
     return (every / GLANCE_RUN) * total;
   };
   return { doubt: b.doubt, sum };

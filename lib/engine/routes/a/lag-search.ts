@@ -88,7 +88,11 @@ function climb(c: CrossSpectrum, start: number, cell: number, objective: Objecti
     // Newton converges quadratically: from a thousandth of a cell one more step leaves 1e-6 of it, and the value within 1e-12.
     if (Math.abs(step) < 1e-3 * cell) return peakAt(evaluateAt(c, x + step), x + step, objective);
     let next = evaluateAt(c, x + step);
-    for (let halving = 0; halving < 30 && objectiveValue(next, objective) < objectiveValue(d, objective) && Math.abs(step) > 1e-9 * cell; halving++) {
+    for (
+      let halving = 0;
+      halving < 30 && objectiveValue(next, objective) < objectiveValue(d, objective) && Math.abs(step) > 1e-9 * cell;
+      halving++
+    ) {
       step /= 2;
       next = evaluateAt(c, x + step);
     }
@@ -123,9 +127,9 @@ function coreOf(c: CrossSpectrum): Core {
   let total = 0;
   for (let j = 0; j < c.n; j += CORE_SAMPLE) total += CORE_SAMPLE * sizeAt(c, j);
   let to = c.n;
-  for (let left = 0; to > 1 && (left += sizeAt(c, to - 1)) < 0.005 * total; ) to--;
+  for (let left = 0; to > 1 && (left += sizeAt(c, to - 1)) < 0.005 * total;) to--;
   let from = 0;
-  for (let left = 0; from < to - 1 && (left += sizeAt(c, from)) < 0.005 * total; ) from++;
+  for (let left = 0; from < to - 1 && (left += sizeAt(c, from)) < 0.005 * total;) from++;
   return { from, to };
 }
 
@@ -138,7 +142,8 @@ interface Scratch {
 /** Buffers of the last size used: a sweep asks for the same one hundreds of times. */
 let scratch: Scratch | null = null;
 function scratchOf(size: number): Scratch {
-  if (scratch?.values.length !== size) scratch = { data: new Float64Array(2 * size), out: new Float64Array(2 * size), values: new Float64Array(size) };
+  if (scratch?.values.length !== size)
+    scratch = { data: new Float64Array(2 * size), out: new Float64Array(2 * size), values: new Float64Array(size) };
   scratch.data.fill(0);
   return scratch;
 }

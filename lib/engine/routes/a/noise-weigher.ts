@@ -10,8 +10,8 @@ export interface NoiseWeigher {
   readonly kinksHz: Float64Array;
   /** Largest |d ln S/d ln f| in a range, for choosing the bins. */
   readonly steepness: (fLowHz: number, fHighHz: number) => number;
-  /** Spacing of bins, relative to f, that resolves every kink in a range (Infinity for a closed form). */
-  readonly kinkResolutionHz: (fLowHz: number, fHighHz: number) => number;
+  /** Spacing of bins at which the steeper law beside any kink in a range changes ln S by at most `change` (Infinity for a closed form). */
+  readonly kinkResolutionHz: (fLowHz: number, fHighHz: number, change: number) => number;
   /** out[i] = 1/S at bin first + i, given ln f of every bin; bins inside the curve only. */
   readonly fill: (out: Float64Array, logF: Float64Array, first: number, last: number, offset: number) => void;
   /** 1/S at ln f by the formula that holds just above (side +1) or below (side −1) kink `index`, continued. */
@@ -182,23 +182,20 @@ function tableWeigher(curve: NoiseCurve, points: Float64Array): NoiseWeigher {
     ceiling: points.reduce((most, f) => Math.max(most, 1 / curve.psd(f)), 0),
     kinksHz,
     steepness: (fLowHz, fHighHz) => Math.max(Math.abs(slope[firstKinkAbove(fLowHz)]!), Math.abs(slope[firstKinkAbove(fHighHz)]!)),
-    kinkResolutionHz: (fLowHz, fHighHz) => finestKink(kinksHz, slope, fLowHz, fHighHz),
+    kinkResolutionHz: (fLowHz, fHighHz, change) => finestKink(kinksHz, slope, fLowHz, fHighHz, change),
     fill,
     continuedAt: (index, side, logF) => inSegment(side > 0 ? index + 1 : index, logF),
     firstKinkAbove,
   };
 }
 
-/** A kink is resolved when the steeper law beside it changes by less than a third from bin to bin. */
-const CHANGE_A_BIN = 0.3;
-
-function finestKink(kinksHz: Float64Array, slope: Float64Array, fLowHz: number, fHighHz: number): number {
+function finestKink(kinksHz: Float64Array, slope: Float64Array, fLowHz: number, fHighHz: number, change: number): number {
   let finest = Infinity;
   for (let i = 0; i < kinksHz.length; i++) {
     const f = kinksHz[i]!;
     if (f <= fLowHz || f >= fHighHz) continue;
     const steep = Math.max(Math.abs(slope[i]!), Math.abs(slope[i + 1]!), 1);
-    finest = Math.min(finest, (CHANGE_A_BIN * f) / steep);
+    finest = Math.min(finest, (change * f) / steep);
   }
   return finest;
 }

@@ -67,7 +67,8 @@ function longestLagS({ sides, absoluteTimes, longestS }: PrepareRequest, store: 
 /** Where both contents and the band overlap, in Hz, before the grids' own upper ends. */
 export function contentBand(sides: readonly Side[], band: Band, store: SpectrumStore): { low: number; high: number } {
   const ends = sides.map(({ waveform, secondsPerUnit }) => {
-    if (waveform.domain === 'frequency') return [waveform.axis[0]! / secondsPerUnit, waveform.axis[waveform.axis.length - 1]! / secondsPerUnit] as const;
+    if (waveform.domain === 'frequency')
+      return [waveform.axis[0]! / secondsPerUnit, waveform.axis[waveform.axis.length - 1]! / secondsPerUnit] as const;
     return [0, store.time(waveform).nyquist / secondsPerUnit] as const;
   });
   return { low: Math.max(band.fLowHz, ...ends.map(([low]) => low)), high: Math.min(band.fHighHz, ...ends.map(([, high]) => high)) };
@@ -83,7 +84,8 @@ interface Spacing {
 }
 
 /** Halvings after which 1/(lag·2^n) is at most the spacing wanted. */
-const doublingsTo = (lag: number, wanted: number): number => Math.max(0, Math.min(40, Math.ceil(Math.log2(1 / (lag * wanted)) - 1e-9) || 0));
+const doublingsTo = (lag: number, wanted: number): number =>
+  Math.max(0, Math.min(40, Math.ceil(Math.log2(1 / (lag * wanted)) - 1e-9) || 0));
 
 /**
  * Spacing of the bins. It does not depend on the mass unless the noise asks for finer bins, and
@@ -95,7 +97,7 @@ function spacing(request: PrepareRequest, store: SpectrumStore, numerics: Numeri
   const lag = Number((longestLagS(request, store) / perUnit).toPrecision(13)) * LAG_ROOM;
   const { low, high } = contentBand(request.sides, request.band, store);
   const weigher = store.weigher(request.band.noise, numerics.noiseTableHalvings);
-  const must = doublingsTo(lag, perUnit * Math.min((high - low) / LEAST_BINS, weigher.kinkResolutionHz(low, high)));
+  const must = doublingsTo(lag, perUnit * Math.min((high - low) / LEAST_BINS, weigher.kinkResolutionHz(low, high, numerics.kinkChange)));
   const fromFile = request.sides.some((side) => side.waveform.domain === 'frequency');
   const file = fromFile ? doublingsTo(lag, (perUnit * (high - low)) / MOST_FILE_BINS) : MOST_EDGE_DOUBLINGS;
   const learned = Math.max(extra, ...request.sides.map((side) => store.paddings(side.waveform)));
@@ -104,10 +106,21 @@ function spacing(request: PrepareRequest, store: SpectrumStore, numerics: Numeri
   const most = MOST_SAMPLES * 2 ** numerics.padDoublings;
   while (used > 0 && longestTransform(request, store, numerics, 1 / (lag * 2 ** used), ratios) > most) used--;
   const atCap = used < doublings + numerics.padDoublings;
-  return { dF: fitted(request, store, numerics, 1 / (lag * 2 ** used), ratios), doublings, mostDoublings: atCap ? doublings : must + file, lagStride: 2 ** used };
+  return {
+    dF: fitted(request, store, numerics, 1 / (lag * 2 ** used), ratios),
+    doublings,
+    mostDoublings: atCap ? doublings : must + file,
+    lagStride: 2 ** used,
+  };
 }
 
-function longestTransform(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, dF: number, ratios: readonly number[]): number {
+function longestTransform(
+  request: PrepareRequest,
+  store: SpectrumStore,
+  numerics: Numerics,
+  dF: number,
+  ratios: readonly number[],
+): number {
   return Math.max(
     ...request.sides.map((side, i) => {
       if (side.waveform.domain === 'frequency') return topOf(side, request.band) / (dF * ratios[i]!);
@@ -166,7 +179,8 @@ function weightsFor(
   return binWeights(store.weigher(band.noise, numerics.noiseTableHalvings), rangeFor(spectra, sides, band, dfHz, numerics, liveLast));
 }
 
-const everySecond = (values: Float64Array): Float64Array => Float64Array.from({ length: (values.length + 1) >> 1 }, (_, k) => values[2 * k]!);
+const everySecond = (values: Float64Array): Float64Array =>
+  Float64Array.from({ length: (values.length + 1) >> 1 }, (_, k) => values[2 * k]!);
 
 /** What one pass over a weighted spectrum tells. */
 interface Survey {
@@ -238,7 +252,13 @@ interface Outlook {
 }
 
 /** What can be said of these bins before they are weighed one by one. */
-function outlook(request: PrepareRequest, dF: readonly number[], spectra: readonly Spectrum[], store: SpectrumStore, numerics: Numerics): Outlook {
+function outlook(
+  request: PrepareRequest,
+  dF: readonly number[],
+  spectra: readonly Spectrum[],
+  store: SpectrumStore,
+  numerics: Numerics,
+): Outlook {
   const { sides, band } = request;
   const dfHz = dF[0]! / sides[0]!.secondsPerUnit;
   const weigher = store.weigher(band.noise, numerics.noiseTableHalvings);
@@ -258,16 +278,36 @@ function outlook(request: PrepareRequest, dF: readonly number[], spectra: readon
 function fileIsLoose(s: Spectrum, side: Side, band: Band, weights: BinWeights, store: SpectrumStore, numerics: Numerics): boolean {
   if (side.waveform.domain !== 'frequency') return false;
   const halved = { dF: 2 * s.dF, firstBin: Math.ceil(s.firstBin / 2), lastBin: Math.floor(s.lastBin / 2) };
-  const thin: Spectrum = { ...s, ...halved, zRe: everySecond(s.zRe), zIm: everySecond(s.zIm), yRe: everySecond(s.yRe), yIm: everySecond(s.yIm) };
+  const thin: Spectrum = {
+    ...s,
+    ...halved,
+    zRe: everySecond(s.zRe),
+    zIm: everySecond(s.zIm),
+    yRe: everySecond(s.yRe),
+    yIm: everySecond(s.yIm),
+  };
   const coarse = survey(thin, weightsFor([thin], [side], band, 2 * weights.dfHz, store, numerics)).all;
   const fine = survey(s, weightsFor([s], [side], band, weights.dfHz, store, numerics)).all;
   return Math.abs(2 * coarse - fine) > SETTLED * Math.abs(fine);
 }
 
-const spectraOn = (request: PrepareRequest, { dF }: Spacing, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Spectrum[] =>
+const spectraOn = (
+  request: PrepareRequest,
+  { dF }: Spacing,
+  store: SpectrumStore,
+  numerics: Numerics,
+  contents?: readonly Content[],
+): Spectrum[] =>
   request.sides.map((side, i) => sideSpectrum(side, contents?.[i] ?? lineOf(side), dF[i]!, topOf(side, request.band), store, numerics));
 
-function onBins(request: PrepareRequest, plan: Spacing, spectra: readonly Spectrum[], liveLast: number, store: SpectrumStore, numerics: Numerics): Prepared {
+function onBins(
+  request: PrepareRequest,
+  plan: Spacing,
+  spectra: readonly Spectrum[],
+  liveLast: number,
+  store: SpectrumStore,
+  numerics: Numerics,
+): Prepared {
   const { dF, lagStride } = plan;
   const dfHz = dF[0]! / request.sides[0]!.secondsPerUnit;
   return { dF, dfHz, lagStride, spectra, weights: weightsFor(spectra, request.sides, request.band, dfHz, store, numerics, liveLast) };
@@ -276,7 +316,9 @@ function onBins(request: PrepareRequest, plan: Spacing, spectra: readonly Spectr
 function trimmed(prepared: Prepared, surveys: readonly Survey[]): Prepared {
   const { weights } = prepared;
   const last = Math.max(...surveys.map(({ lastUsed }) => lastUsed));
-  return last + 1 >= weights.values.length ? prepared : { ...prepared, weights: { ...weights, values: weights.values.subarray(0, last + 1) } };
+  return last + 1 >= weights.values.length
+    ? prepared
+    : { ...prepared, weights: { ...weights, values: weights.values.subarray(0, last + 1) } };
 }
 
 /**
@@ -294,7 +336,7 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
   for (;;) {
     const plan = spacing(request, store, unpadded, extra);
     const spectra = spectraOn(request, plan, store, numerics, contents);
-    const mayPad = numerics.refineStep && plan.doublings < plan.mostDoublings;
+    const mayPad = numerics.refineBins && plan.doublings < plan.mostDoublings;
     const { loose, liveLast } = outlook(request, plan.dF, spectra, store, numerics);
     if (mayPad && loose) {
       extra = padded(request, plan, store);
@@ -304,7 +346,8 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
     const surveys = found.spectra.map((s) => survey(s, found.weights));
     const full = numerics.refineStep ? fullSide(request, found, surveys, store, numerics) : undefined;
     if (full !== undefined) store.halve(full.waveform);
-    else if (mayPad && spectra.some((s, i) => fileIsLoose(s, request.sides[i]!, request.band, found.weights, store, numerics))) extra = padded(request, plan, store);
+    else if (mayPad && spectra.some((s, i) => fileIsLoose(s, request.sides[i]!, request.band, found.weights, store, numerics)))
+      extra = padded(request, plan, store);
     else if (numerics.padDoublings > 0) return finer(request, extra, store, numerics, contents);
     else return trimmed(found, surveys);
   }
@@ -323,7 +366,13 @@ function finer(request: PrepareRequest, extra: number, store: SpectrumStore, num
 }
 
 /** A side with power left where its resampled grid ends below both the band and the record's own limit, and whose step may be halved. */
-function fullSide(request: PrepareRequest, { spectra, weights, dF }: Prepared, surveys: readonly Survey[], store: SpectrumStore, numerics: Numerics): Side | undefined {
+function fullSide(
+  request: PrepareRequest,
+  { spectra, weights, dF }: Prepared,
+  surveys: readonly Survey[],
+  store: SpectrumStore,
+  numerics: Numerics,
+): Side | undefined {
   const { low, high } = contentBand(request.sides, request.band, store);
   return request.sides.find((side, i) => {
     const { all, top } = surveys[i]!;
