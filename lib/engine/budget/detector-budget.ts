@@ -8,7 +8,9 @@ import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Evaluated, Recipe, RouteKit } from '@/lib/engine/quantities/detector/recipe';
 import { houseCosmology } from '@/lib/engine/units/cosmology';
-import { isPrinted, standardOf, type ComputationError } from './error-bar';
+import { houseNumerics } from '@/lib/engine/routes/a/numerics';
+import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+import { isPrinted, kitOf, standardOf, type ComputationError } from './error-bar';
 
 export interface BudgetContext {
   readonly recipe: Recipe;
@@ -17,6 +19,7 @@ export interface BudgetContext {
   readonly traits: DetectorTraits;
   readonly found: Evaluated;
   readonly error: ComputationError;
+  readonly store: SpectrumStore;
 }
 
 const waveformsOf = (request: PointRequest): ConditionedWaveform[] => [request.a, ...(request.b ? [request.b] : [])];
@@ -70,6 +73,7 @@ function taperLine(context: BudgetContext): BudgetLine {
 }
 
 const LINEAR_PARTS = 8;
+const COARSE_KINKS = 5;
 
 /** The same table under S linear in f between points: its straight lines as eight short power laws each. */
 function linearBetween(noise: NoiseCurve, points: Float64Array): NoiseCurve | null {
@@ -99,8 +103,11 @@ function noiseLine(context: BudgetContext): BudgetLine {
   const { noise } = context.request;
   if (noise.points === null) return { ...base, u: 0, note: 'A closed form is evaluated, not interpolated.' };
   if (noise.points.length < 3) return { ...base, u: 0, note: 'Two points: one power law.' };
+  // Two curves are compared to a few digits: coarse bins serve, as long as both stand on them.
+  const coarse = kitOf({ ...houseNumerics, refineStep: false, kinkChange: COARSE_KINKS }, context.store);
+  const base = context.recipe.again(coarse, context.request, context.found);
   const others = [linearBetween(noise, noise.points), everySecondPoint(noise, noise.points)].filter((curve) => curve !== null);
-  const moves = others.map((curve) => movedBy(context, { noise: { ...curve, alreadyAveraged: noise.alreadyAveraged } }));
+  const moves = others.map((curve) => context.recipe.again(coarse, { ...context.request, noise: { ...curve, alreadyAveraged: noise.alreadyAveraged } }, context.found) - base);
   const moved = largest(moves);
   return { ...base, u: moved === null ? null : standardOf(moved), note: `S linear in f between points, and every second of ${noise.points.length} points left out: ${moves.map((x) => short(x, 2)).join(', ')}; half-width over √3.` };
 }

@@ -13,9 +13,10 @@ export interface Transform {
   readonly inverse: (out: Float64Array, data: Float64Array) => void;
 }
 
-/** Tables of larger sizes are built anew each time: at 2^20 and more they would hold a hundred megabytes for good. */
+/** Of larger sizes only the last is kept: at 2^20 and more the tables would hold a hundred megabytes for good. */
 const KEPT_SIZE = 1 << 18;
 const kept = new Map<number, Transform>();
+let lastLarge: Transform | null = null;
 
 const build = (size: number): Transform => {
   const fft = new FFT(size);
@@ -33,8 +34,10 @@ const build = (size: number): Transform => {
 export function transformOfSize(size: number): Transform {
   const known = kept.get(size);
   if (known) return known;
+  if (lastLarge?.size === size) return lastLarge;
   const made = build(size);
   if (size <= KEPT_SIZE) kept.set(size, made);
+  else lastLarge = made;
   return made;
 }
 

@@ -110,7 +110,7 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
   const bars = fromNeighbours(found.length, new Map([...errors].map(([i, error]) => [i, error.expanded])));
   step(watch, 0.9, 'error budget');
   const shown = requests.map((r, i) => recipe.shownPoint(r, found[i]!));
-  const budget = detectorBudget({ recipe, kit: walk.kitA, request: requests[worst]!, traits: requests[worst]!.traits, found: found[worst]!, error: errors.get(worst)! });
+  const budget = detectorBudget({ recipe, kit: walk.kitA, request: requests[worst]!, traits: requests[worst]!.traits, found: found[worst]!, error: errors.get(worst)!, store });
   const points = found.map((here, i): MeasuredPoint => {
     const remarks = remarksOf(walk, here, shown[i]!);
     const components = { ...here.components, ...recipe.alsoShown?.(requests[i]!, store) };

@@ -15,6 +15,8 @@ export interface Numerics {
   readonly noiseTableHalvings: number;
   /** Fraction of the resampled series' own bandwidth that enters the sums. */
   readonly topShare: number;
+  /** Largest change of ln S from bin to bin beside a kink of a tabulated curve: it sets how fine the bins are. */
+  readonly kinkChange: number;
   /** Halve a step whose grid ends before the content does; what was learned once holds for every variant. */
   readonly refineStep: boolean;
   /** Halve bins that do not resolve the band's edges; off while scanning. */
@@ -28,6 +30,7 @@ export const houseNumerics: Numerics = {
   interpolationOrder: 8,
   noiseTableHalvings: 0,
   topShare: 1,
+  kinkChange: 0.6,
   refineStep: true,
   refineBins: true,
 };

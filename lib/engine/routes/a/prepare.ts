@@ -1,5 +1,6 @@
 import type { Band, Side } from '@/lib/engine/contract/route';
 import { powerOfTwoFrom } from '@/lib/engine/fourier/transform';
+import { lastLiveBin, powersOf, survey, type Survey } from './band-power';
 import { binWeights, glanceAtEdges, type BinRange, type BinWeights } from './bin-weights';
 import type { Numerics } from './numerics';
 import { MOST_SAMPLES } from './sample-grid';
@@ -35,10 +36,6 @@ const LEAST_BINS = 64;
 const MOST_FILE_BINS = 1 << 18;
 /** Fraction of a waveform's weighted power allowed in the top of its own grid before the step is halved. */
 const EMPTY_TOP = 1e-13;
-const TOP_PART = 0.85;
-/** Weighted power that adds nothing to a double. */
-const UNSEEN = 1e-17;
-const TRIM_BLOCK = 64;
 /** Bins are halved until two orders less at the band's edges, or (for a file without a length) half the bins, move the power by less. */
 const SETTLED = 3e-9;
 /** Longest padding that an edge may ask for, as halvings of the first bins. */
@@ -181,69 +178,6 @@ function weightsFor(
 
 const everySecond = (values: Float64Array): Float64Array =>
   Float64Array.from({ length: (values.length + 1) >> 1 }, (_, k) => values[2 * k]!);
-
-/** What one pass over a weighted spectrum tells. */
-interface Survey {
-  readonly all: number;
-  /** The share above TOP_PART of the grid's own end. */
-  readonly top: number;
-  /** Weights after this index hold nothing that a double could see. */
-  readonly lastUsed: number;
-}
-
-interface Powers {
-  /** |Z|² + |Y|² of every bin. */
-  readonly at: Float64Array;
-  /** Sums of them over each block of TRIM_BLOCK bins and all above it. */
-  readonly tails: Float64Array;
-}
-
-const powers = new WeakMap<Spectrum, Powers>();
-
-/** Once for each spectrum: a sweep looks at the same one at every mass. */
-function powersOf(s: Spectrum): Powers {
-  const known = powers.get(s);
-  if (known) return known;
-  const { zRe, zIm, yRe, yIm } = s;
-  const at = new Float64Array(zRe.length);
-  for (let k = 0; k < at.length; k++) at[k] = zRe[k]! * zRe[k]! + zIm[k]! * zIm[k]! + yRe[k]! * yRe[k]! + yIm[k]! * yIm[k]!;
-  const tails = new Float64Array(Math.ceil(at.length / TRIM_BLOCK));
-  for (let k = at.length - 1; k >= 0; k--) tails[Math.floor(k / TRIM_BLOCK)]! += at[k]!;
-  for (let i = tails.length - 2; i >= 0; i--) tails[i]! += tails[i + 1]!;
-  const made = { at, tails };
-  powers.set(s, made);
-  return made;
-}
-
-/** The last bin above which no weight of the curve could make the power visible beside `all`. */
-function lastLiveBin(s: Spectrum, all: number, ceiling: number): number {
-  const { tails } = powersOf(s);
-  const unseen = (UNSEEN * Math.abs(all)) / ceiling / 10;
-  let i = tails.length;
-  while (i > 0 && tails[i - 1]! < unseen) i--;
-  return (i + 1) * TRIM_BLOCK;
-}
-
-/** Σ V (|Z|² + |Y|²) over weights from … to − 1. */
-function powerBetween(power: Float64Array, { first, values }: BinWeights, from: number, to: number): number {
-  let sum = 0;
-  for (let j = from; j < to; j++) sum += values[j]! * power[first + j]!;
-  return sum;
-}
-
-function survey(s: Spectrum, weights: BinWeights): Survey {
-  const { at: power } = powersOf(s);
-  const n = weights.values.length;
-  const topIndex = Math.max(0, Math.min(n, Math.ceil((TOP_PART * s.fLast) / s.dF) - weights.first));
-  const top = powerBetween(power, weights, topIndex, n);
-  const all = powerBetween(power, weights, 0, topIndex) + top;
-  let lastUsed = n - 1;
-  for (let tail = 0; lastUsed > 0; lastUsed -= TRIM_BLOCK) {
-    tail += powerBetween(power, weights, Math.max(0, lastUsed - TRIM_BLOCK + 1), lastUsed + 1);
-    if (!(Math.abs(tail) < UNSEEN * Math.abs(all))) break;
-  }
-  return { all, top, lastUsed };
-}
 
 interface Outlook {
   /** Does the power of some side still hang on how the band's edges are resolved by the bins? */
