@@ -19,8 +19,9 @@ const printedOf = (raw: unknown): string => {
 };
 
 /** Points of a claim as its sheet has them: one, or one for each value of the swept setting. */
-function pointsOf(claim: Loose): readonly ClaimedPoint[] {
-  const tolerance = typeof claim['tolerance'] === 'number' ? claim['tolerance'] : null;
+function pointsOf(claim: Loose, isLn: boolean): readonly ClaimedPoint[] {
+  const declared = typeof claim['tolerance'] === 'number' ? claim['tolerance'] : null;
+  const tolerance = declared !== null && isLn ? Math.log1p(declared) : declared;
   const over = isLoose(claim['over']) ? Object.entries(claim['over'])[0] : undefined;
   const claimed = Array.isArray(claim['claimed']) ? claim['claimed'] : [claim['claimed']];
   const values = over && Array.isArray(over[1]) ? over[1] : [];
@@ -36,7 +37,7 @@ export function headingsOfSheet(claims: readonly Loose[]): readonly ClaimHeading
     const name = text(claim['quantity']) ?? 'quantity not chosen';
     const quantity = quantities.get(name) ?? null;
     const empty: ResultClaim = { id, quantity: name, unit: quantity?.unit ?? '', verdict: 'not-computable', remarks: [], coverage: { state: 'unknown' }, points: [], budget: [], assumed: [], settings: [], routeB: [], findings: [], candidates: [] };
-    return { ...headingOf(empty, quantity, wordsOf(claim)), points: pointsOf(claim) };
+    return { ...headingOf(empty, quantity, wordsOf(claim)), points: pointsOf(claim, quantity?.scale === 'ln') };
   });
 }
 

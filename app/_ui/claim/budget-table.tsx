@@ -64,7 +64,7 @@ export function BudgetTable({ claim }: { readonly claim: ResultClaim }) {
         <tbody>
           <GroupHead>Chosen or not known from the files: decides coverage, not <i>U</i></GroupHead>
           <Lines group={coverage} unit={claim.unit} />
-          <Sum group={coverage} unit={claim.unit} label={<>Known part, <i>k</i> = 2</>}>Coverage: <CoverageStatement coverage={claim.coverage} /></Sum>
+          <Sum group={coverage} unit={claim.unit} label={<>Known part, <i>k</i> = 2</>}>Coverage: <CoverageStatement coverage={claim.coverage} full /></Sum>
         </tbody>
       )}
     </Table>

@@ -100,7 +100,7 @@ function Place({ text }: { readonly text: string }) {
 function Tolerance({ claimed, ln, plain, unit }: { readonly claimed: ClaimedPoint; readonly ln: boolean; readonly plain: boolean; readonly unit: string }) {
   if (/^[<>≤≥]/.test(claimed.printed)) return <span className="whitespace-normal">a bound has none</span>;
   if (claimed.tolerance === null) return <span className="whitespace-normal">natural</span>;
-  if (ln) return <NumberCell value={claimed.tolerance * 100} significant={2} unit="%" />;
+  if (ln) return <NumberCell value={Math.expm1(claimed.tolerance) * 100} significant={2} unit="%" />;
   return <NumberCell value={claimed.tolerance} plain={plain && claimed.tolerance >= 1e-7} unit={unit} />;
 }
 
@@ -118,7 +118,7 @@ function Apart({ heading, point, style }: { readonly heading: ClaimHeading; read
   const result = point.result;
   if (!result || result.apart === null) return <NoNumber />;
   const ln = heading.scale === 'ln';
-  const parts = ln ? numberParts((Math.exp(result.apart) - 1) * 100, { significant: 2, signed: true }) : numberParts(result.apart, { decimals: style.decimals, plain: style.plain, signed: true });
+  const parts = ln ? numberParts(Math.expm1(result.apart) * 100, { significant: 2, signed: true }) : numberParts(result.apart, { decimals: style.decimals, plain: style.plain, signed: true });
   return (
     <>
       <span className="ap">{parts ? <><SetNumber parts={parts} />{ln ? ' %' : null}</> : <Unknown />}</span>

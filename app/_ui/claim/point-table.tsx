@@ -20,7 +20,7 @@ export function PointTable({ claim, heading }: { readonly claim: ResultClaim; re
               <th scope="row" className="font-normal!">{formatAt(point.at)}</th>
               <td className="num">{`${point.printed} ${unitText(heading.unit)}`.trim()}</td>
               <td className="num">{formatWithUncertainty(point.value, point.expandedUncertainty, claim.unit)}</td>
-              <td className="num">{point.apart === null ? '—' : heading.scale === 'ln' ? `${formatNumber((Math.exp(point.apart) - 1) * 100, { significant: 2, signed: true })} %` : formatNumber(point.apart, { significant: 2, signed: true })}</td>
+              <td className="num">{point.apart === null ? '—' : heading.scale === 'ln' ? `${formatNumber(Math.expm1(point.apart) * 100, { significant: 2, signed: true })} %` : formatNumber(point.apart, { significant: 2, signed: true })}</td>
               <td><VerdictChip state={point.verdict} bare /></td>
             </tr>
           ))}

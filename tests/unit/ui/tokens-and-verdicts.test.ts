@@ -80,6 +80,8 @@ describe('the gap gauge', () => {
 describe('coverage and budget', () => {
   it('names what is missing and how many times too small an uncertainty is', () => {
     expect(coverageText({ state: 'unknown', missing: ['resolution'] })).toEqual({ word: 'Unknown', because: 'missing: resolution' });
+    expect(coverageText({ state: 'unknown', missing: ['a', 'b'] }).because).toBe('2 components are missing');
+    expect(coverageText({ state: 'unknown', missing: ['a', 'b'] }, true).because).toBe('missing: a, b');
     expect(coverageText({ state: 'understated', factor: 4.12 }).word).toBe('Understated × 4.1');
   });
   it('shares the variance within a group, and leaves the unknown out of it', () => {
