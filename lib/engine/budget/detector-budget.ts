@@ -105,9 +105,9 @@ function noiseLine(context: BudgetContext): BudgetLine {
   if (noise.points.length < 3) return { ...base, u: 0, note: 'Two points: one power law.' };
   // Two curves are compared to a few digits: coarse bins serve, as long as both stand on them.
   const coarse = kitOf({ ...houseNumerics, refineStep: false, kinkChange: COARSE_KINKS }, context.store);
-  const base = context.recipe.again(coarse, context.request, context.found);
+  const before = context.recipe.again(coarse, context.request, context.found);
   const others = [linearBetween(noise, noise.points), everySecondPoint(noise, noise.points)].filter((curve) => curve !== null);
-  const moves = others.map((curve) => context.recipe.again(coarse, { ...context.request, noise: { ...curve, alreadyAveraged: noise.alreadyAveraged } }, context.found) - base);
+  const moves = others.map((curve) => context.recipe.again(coarse, { ...context.request, noise: { ...curve, alreadyAveraged: noise.alreadyAveraged } }, context.found) - before);
   const moved = largest(moves);
   return { ...base, u: moved === null ? null : standardOf(moved), note: `S linear in f between points, and every second of ${noise.points.length} points left out: ${moves.map((x) => short(x, 2)).join(', ')}; half-width over √3.` };
 }
