@@ -4,9 +4,7 @@ import { Readable } from 'node:stream';
 import { closeDatabase, database, openDatabase, useDatabase, type Database } from '@/db/client';
 import { openAccount } from '@/db/writes/accounts/open-account';
 import { ok } from '@/lib/kernel/result';
-import { reproduceWith } from '@/lib/pipeline/reproduce-with';
-import { smallCatalogue } from './small-catalogue';
-import { BURST_MATCH } from './burst-sheet';
+import { reproduce } from '@/lib/pipeline/reproduce';
 import type { AccountRole } from '@/lib/policy/account-role';
 import type { SignedInActor } from '@/lib/policy/actor';
 import type { Outcome } from '@/lib/services/app-error';
@@ -68,7 +66,7 @@ async function person(name: string, role: AccountRole = 'member'): Promise<Signe
 export const computeHere: ComputeSheet = async ({ sheet, files, withFigures }, { onProgress, signal }) => {
   const pathOf = new Map(files.map((f) => [f.name, f.path]));
   const openFile = (name: string) => createReadStream(pathOf.get(name) ?? '/nowhere') as AsyncIterable<Uint8Array>;
-  const done = await reproduceWith(smallCatalogue((r) => ({ points: [{ at: {}, value: BURST_MATCH, routes: { A: BURST_MATCH, B: BURST_MATCH }, expandedUncertainty: 1e-7 }], budget: [], findings: [], assumed: [], settings: [], routeBPoints: [0], figures: [] })), { sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256 });
+  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256 });
   return done.ok ? ok(done.value) : done;
 };
 

@@ -33,15 +33,15 @@ function startWorker(): ChildProcess {
 }
 const said: string[] = [];
 
-async function end(worker: ChildProcess, signal: NodeJS.Signals = 'SIGKILL'): Promise<number> {
+/** The code with which it ended; null after a signal. A worker that hangs is cut off by its own patience with code 1. */
+async function end(worker: ChildProcess, signal: NodeJS.Signals = 'SIGKILL'): Promise<number | null> {
   workers.delete(worker);
-  const began = performance.now();
   if (worker.exitCode === null && worker.signalCode === null) {
     const gone = new Promise((resolve) => worker.once('exit', resolve));
     worker.kill(signal);
     await gone;
   }
-  return performance.now() - began;
+  return worker.exitCode;
 }
 
 async function until<T>(look: () => Promise<T | undefined | false>, what: string): Promise<T> {
@@ -98,11 +98,11 @@ describe('a worker killed in the middle of a run', () => {
 });
 
 describe('a worker told to stop in the middle of a run', () => {
-  it('ends within two seconds and hands the run on with all its tries', async () => {
+  it('ends by itself and hands the run on with all its tries', async () => {
     const { runId } = await longDraft();
     const first = startWorker();
     await underWay(runId);
-    expect(await end(first, 'SIGTERM')).toBeLessThan(2000);
+    expect(await end(first, 'SIGTERM')).toBe(0);
     const jobs = await desk.worker.$client.query('select attempts, locked_by from graphile_worker._private_jobs');
     expect(jobs.rows).toEqual([{ attempts: 0, locked_by: null }]);
     startWorker();
