@@ -1,4 +1,11 @@
-/** The point furthest from its claim in units of the tolerance; the first where nothing is claimed as a value. */
+/**
+ * The point furthest from its claim in units of the tolerance; the first where nothing is claimed as a value.
+ * Shape:  values and claimed are parallel; an index comes back.
+ * Units:  values, claimed and tolerance share the unit of the quantity.
+ * Error:  none: comparisons only.
+ * Fails:  never; a value or claim that is null is passed over.
+ * Source: our definition of the worst point (settings: which points route B takes).
+ */
 export function worstIndex(values: readonly (number | null)[], claimed: readonly (number | null)[], tolerance: (claimed: number) => number): number {
   let worst = 0;
   let furthest = -1;

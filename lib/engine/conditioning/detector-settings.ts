@@ -154,7 +154,14 @@ function assemble(request: PointRequest, scale: Scale): DetectorPoint {
   };
 }
 
-/** Settings that have no default: a mass for waveforms in M, a distance for their loudness, a redshift for source-frame masses. */
+/**
+ * Settings that have no default: a mass for waveforms in M, a distance for their loudness, a redshift for source-frame masses.
+ * Shape:  any number of waveforms; a list of names.
+ * Units:  none: only what is declared is looked at.
+ * Error:  none.
+ * Fails:  never; what is missing is the answer.
+ * Source: our rule: no number is invented that would scale the result.
+ */
 export function requiredSettings(waveforms: readonly Waveform[], declared: DeclaredSettings, over: SettingName | null, traits: DetectorTraits): SettingName[] {
   const has = (name: SettingName): boolean => declared[name] !== undefined || over === name;
   const needed: SettingName[] = [];

@@ -1,6 +1,13 @@
 import type { Mode } from '@/lib/engine/contract/waveform';
 
-/** Largest sampled modulus of a complex series. */
+/**
+ * Largest sampled modulus of a complex series.
+ * Shape:  re and im are parallel, or im is null for a real series; a scalar comes back.
+ * Units:  those of the series.
+ * Error:  of the samples, not of the curve between them: low by up to (ωΔt)²/8 of the peak.
+ * Fails:  never; 0 for an empty series.
+ * Source: definition.
+ */
 export function peakModulus(re: Float64Array, im: Float64Array | null): number {
   const n = re.length;
   let top = 0;

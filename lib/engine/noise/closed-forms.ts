@@ -25,6 +25,7 @@ export function firstGenerationSecondSite(fHz: number): number {
   return 1.02e-45 * ((7.87 * x) ** -4.8 + 6 / (17 * x) + 1 + x * x);
 }
 
+/** Curve A1 of the catalogue, where sources and ranges stand; A2, A3 and A4 follow. */
 export function firstGenerationFit(fHz: number): number {
   const x = fHz / 150;
   return 9e-46 * ((4.49 * x) ** -56 + 0.16 * x ** -4.52 + 0.52 + 0.32 * x * x);
@@ -36,6 +37,7 @@ export function secondGenerationFit(fHz: number): number {
   return 1e-49 * (x ** -4.14 - 5 / x2 + (111 * (1 - x2 + (x2 * x2) / 2)) / (1 + x2 / 2));
 }
 
+/** Given as an amplitude in ln f, hence the square. */
 export function secondGenerationThirdSite(fHz: number): number {
   const x = Math.log(fHz / 300);
   const term = (a: number, b: number, c: number, d: number) => a * Math.exp(b + c * x + d * x * x);

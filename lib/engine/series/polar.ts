@@ -11,7 +11,14 @@ export interface PolarSeries {
   readonly phase: Float64Array;
 }
 
-/** Amplitude and unwrapped phase of a complex series. */
+/**
+ * Amplitude and unwrapped phase of a complex series.
+ * Shape:  re and im are parallel; so are amplitude and phase.
+ * Units:  amplitude as the series, phase in rad.
+ * Error:  rounding; turns are counted right where the phase moves by less than half a cycle a sample (see `isFinelySampled`).
+ * Fails:  never; where the amplitude is 0 the phase stays as it was.
+ * Source: definition; unwrapping as in common practice.
+ */
 export function polarOf({ re, im }: ComplexSeries): PolarSeries {
   const n = re.length;
   const amplitude = new Float64Array(n);
@@ -33,7 +40,14 @@ export function polarOf({ re, im }: ComplexSeries): PolarSeries {
 /** Below this, real and imaginary parts bend too fast for a local polynomial; amplitude and phase do not. */
 const FINE_SAMPLES_A_CYCLE = 20;
 
-/** Does the phase move by less than a twentieth of a cycle from sample to sample, wherever the series is not negligible? */
+/**
+ * Does the phase move by less than a twentieth of a cycle from sample to sample, wherever the series is not negligible?
+ * Shape:  re and im are parallel; a truth value comes back.
+ * Units:  none: only ratios enter.
+ * Error:  samples under 1e-3 of the largest modulus are passed over.
+ * Fails:  never.
+ * Source: our threshold; the angle from cross and dot product of neighbours.
+ */
 export function isFinelySampled({ re, im }: ComplexSeries): boolean {
   const n = re.length;
   let top = 0;

@@ -82,7 +82,14 @@ export function withResolutionError<T extends Modes>(wave: T, error: ResolutionE
 /** sin²(πx/2) on 0…1: no corner at either end, so the drift adds no power of its own. */
 export const smoothStep = (x: number): number => Math.sin((Math.PI / 2) * Math.min(Math.max(x, 0), 1)) ** 2;
 
-/** Time of the largest |H22| sample, in M. */
+/**
+ * Time of the largest |H22| sample.
+ * Shape:  one set of modes on a common time axis; a scalar comes back.
+ * Units:  M.
+ * Error:  up to half a sample; the true peak lies between samples.
+ * Fails:  throws without a (2,2) mode.
+ * Source: definition.
+ */
 export function peakTime(wave: Modes): number {
   const mode = wave.modes.find(({ l, m }) => l === 2 && m === 2);
   if (!mode) throw new RangeError('the waveform has no (2,2) mode');

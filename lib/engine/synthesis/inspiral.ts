@@ -36,7 +36,14 @@ export function orbitalDecay(binary: Binary): (x: number) => number {
   };
 }
 
-/** x at times 0, step, 2·step, … up to and including the first value at or beyond `endX`. */
+/**
+ * x at times 0, step, 2·step, … up to and including the first value at or beyond `endX`.
+ * Shape:  scalars in; a series as long as it takes comes back.
+ * Units:  x dimensionless, (MΩ)^(2/3); step and time in M.
+ * Error:  fourth order in the step.
+ * Fails:  does not end where `decay` is not positive; the series above is positive for the demonstration’s range.
+ * Source: classical Runge–Kutta of fourth order (common practice).
+ */
 export function integrateInspiral(decay: (x: number) => number, startX: number, endX: number, stepM: number): Float64Array {
   const xs = [startX];
   for (let x = startX; x < endX; xs.push(x)) {

@@ -46,7 +46,14 @@ export const comovingDistanceMpc = (z: number, cosmology: Cosmology): number =>
  */
 export const luminosityDistanceMpc = (z: number, cosmology: Cosmology): number => (1 + z) * comovingDistanceMpc(z, cosmology);
 
-/** The redshift at a luminosity distance, to rounding; bisection, because it is asked once a claim. */
+/**
+ * The redshift at a luminosity distance; bisection, because it is asked once a claim.
+ * Shape:  scalar in, scalar out.
+ * Units:  Mpc in, dimensionless out.
+ * Error:  relative 1e-15 in 1 + z, beside that of `luminosityDistanceMpc`.
+ * Fails:  never; beyond z = 10⁶ the answer stays there.
+ * Source: inverse of `luminosityDistanceMpc`, which grows with z.
+ */
 export function redshiftAt(distanceMpc: number, cosmology: Cosmology): number {
   let low = 0;
   let high = 1;

@@ -55,6 +55,7 @@ function powerBetween(power: Float64Array, { first, values }: BinWeights, from: 
   return sum;
 }
 
+/** How much power lies in the band and at its top, and beyond which bin nothing is left to see. */
 export function survey(s: Spectrum, weights: BinWeights): Survey {
   const { at: power } = powersOf(s);
   const n = weights.values.length;
