@@ -1,5 +1,6 @@
 import type { Claimed } from '@/lib/claims/claimed';
 import type { BudgetLine, MeasuredPoint } from '@/lib/engine/contract/measurement';
+import { isFiniteNumber } from '@/lib/kernel/finite';
 import { expandedOf } from './coverage';
 import type { VerdictWord } from './verdict';
 
@@ -19,17 +20,20 @@ export function remarksOf(points: readonly WeighedPoint[], budget: readonly Budg
 
 /**
  * One guard digit is allowed: a claim overstates when it prints more than d + 1 decimals with
- * d = ⌈−log₁₀ U⌉, U from the whole budget when all of it is known, else the computation's own.
+ * d = ⌈−log₁₀ U⌉. U is the whole budget's when all of it is known; otherwise what is known of it
+ * bounds U from below, since a component that is not available can only add.
  */
 function digitsOverstated(points: readonly WeighedPoint[], budget: readonly BudgetLine[]): string | null {
-  const whole = expandedOf(budget);
+  const unknown = budget.length === 0 || budget.some((line) => !isFiniteNumber(line.u));
+  const known = expandedOf(budget.filter((line) => isFiniteNumber(line.u)));
   for (const { claimed, measured, word } of points) {
     if (word !== 'agrees' || claimed.kind !== 'value' || claimed.digits === null) continue;
-    const own = measured.expandedUncertainty ?? Number.NaN;
-    const uncertainty = budget.length > 0 && Number.isFinite(whole) ? Math.max(whole, own) : own;
+    const uncertainty = Math.max(known, measured.expandedUncertainty ?? 0);
     if (!(uncertainty > 0)) continue;
     const supported = Math.ceil(-Math.log10(uncertainty)) + 1;
-    if (claimed.digits > supported) return `digits overstated: ${claimed.printed} carries ${decimals(claimed.digits)}, U = ${Number(uncertainty.toPrecision(2))} supports ${decimals(Math.max(0, supported))}`;
+    if (claimed.digits <= supported) continue;
+    const size = `${unknown ? 'at least ' : ''}${Number(uncertainty.toPrecision(2))}`;
+    return `digits overstated: ${claimed.printed} carries ${decimals(claimed.digits)}; an uncertainty of ${size} supports ${unknown ? 'at most ' : ''}${decimals(Math.max(0, supported))}`;
   }
   return null;
 }

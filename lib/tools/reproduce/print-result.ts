@@ -49,10 +49,19 @@ function assumedWords(claim: ResultClaim): string {
     .map((name) => {
       const setting = used.get(name);
       if (!setting || setting.value === undefined || setting.value === null) return name;
-      const value = typeof setting.value === 'object' ? JSON.stringify(setting.value) : String(setting.value);
-      return `${name} = ${value}${setting.unit ? ` ${setting.unit}` : ''}`;
+      return `${name} = ${valueWords(setting.value)}${setting.unit ? ` ${setting.unit}` : ''}`;
     })
     .join(', ');
+}
+
+/** A setting's value for reading: six digits, ranges over a sweep as ranges. */
+function valueWords(value: unknown): string {
+  if (typeof value === 'number') return String(Number(value.toPrecision(6)));
+  if (Array.isArray(value)) return `[${value.map(valueWords).join(', ')}]`;
+  if (typeof value !== 'object' || value === null) return String(value);
+  const entries = Object.entries(value);
+  if (entries.map(([name]) => name).join() === 'from,to') return entries.map(([, end]) => valueWords(end)).join(' to ');
+  return entries.map(([name, part]) => `${name} ${valueWords(part)}`).join(' and ');
 }
 
 function findingLines(finding: Finding): string[] {

@@ -52,15 +52,17 @@ describe('remarks', () => {
   });
 
   it('say when a claim carries more than one digit beyond what U supports', () => {
-    expect(remarksOf([point('0.988942', 'agrees', {}, 3e-4)], [])).toEqual(['digits overstated: 0.988942 carries 6 decimals, U = 0.0003 supports 5 decimals']);
+    expect(remarksOf([point('0.988942', 'agrees', {}, 3e-4)], [])).toEqual(['digits overstated: 0.988942 carries 6 decimals; an uncertainty of at least 0.0003 supports at most 5 decimals']);
     expect(remarksOf([point('0.98894', 'agrees', {}, 3e-4)], [])).toEqual([]);
     expect(remarksOf([point(0.98894212, 'agrees', {}, 3e-4)], [])).toEqual([]);
     expect(remarksOf([point('0.988942', 'differs', {}, 3e-4)], [])).toEqual([]);
   });
 
-  it('use the whole budget for that when all of it is known', () => {
-    expect(remarksOf([point('0.98894', 'agrees', {}, 3e-4)], [line('resolution', 0.01)])).toEqual(['digits overstated: 0.98894 carries 5 decimals, U = 0.02 supports 3 decimals']);
-    expect(remarksOf([point('0.98894', 'agrees', {}, 3e-4)], [line('resolution', null)])).toEqual([]);
+  it('use the whole budget for that, or what is known of it as a lower bound', () => {
+    const fine = point('0.98894', 'agrees', {}, 3e-4);
+    expect(remarksOf([fine], [line('taper', 0.01)])).toEqual(['digits overstated: 0.98894 carries 5 decimals; an uncertainty of 0.02 supports 3 decimals']);
+    expect(remarksOf([fine], [line('taper', 0.01), line('resolution', null)])).toEqual(['digits overstated: 0.98894 carries 5 decimals; an uncertainty of at least 0.02 supports at most 3 decimals']);
+    expect(remarksOf([fine], [line('taper', 1e-5), line('resolution', null)])).toEqual([]);
   });
 
   it('say which part of a sweep holds', () => {
