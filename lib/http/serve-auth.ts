@@ -1,8 +1,12 @@
 import { z } from 'zod';
+import { database } from '@/db/client';
+import { recordAudit } from '@/db/writes/audit/record-audit';
 import { auth } from '@/lib/auth/auth';
 import { allowedOrigins } from '@/lib/auth/allowed-origins';
 import { currentActor } from '@/lib/auth/current-actor';
 import { webEnv } from '@/lib/env';
+import { isUuid } from '@/lib/kernel/uuid';
+import { userIdOf, type Actor } from '@/lib/policy/actor';
 import { joinAccountPost } from '@/lib/services/accounts/account-post';
 import { forgetGuesses, guessingRests, noteWrongGuess } from './guess-limit';
 import { judgeOrigin } from './origin';
@@ -39,7 +43,7 @@ export async function serveAuth(request: Request): Promise<Response> {
     const path = new URL(request.url).pathname.replace(/^\/api\/auth/, '');
     if (request.method === 'GET') return GET_DOORS.includes(path) ? await ask(request) : problemResponse(NOT_FOUND);
     const shape = request.method === 'POST' ? POST_DOORS[path] : undefined;
-    return shape ? await post(request, path, shape) : problemResponse(NOT_FOUND);
+    return shape ? await post(request, path, shape, actor.value) : problemResponse(NOT_FOUND);
   } catch (cause) {
     return problemResponse(reportDefect('auth', cause));
   }
@@ -51,7 +55,7 @@ async function ask(request: Request): Promise<Response> {
   return answer;
 }
 
-async function post(request: Request, path: string, shape: z.ZodType): Promise<Response> {
+async function post(request: Request, path: string, shape: z.ZodType, actor: Actor): Promise<Response> {
   const raw = await readJson(request);
   if (!raw.ok) return problemResponse(raw.error);
   const body = parseInput(shape, raw.value);
@@ -60,7 +64,16 @@ async function post(request: Request, path: string, shape: z.ZodType): Promise<R
   headers.delete('content-length');
   headers.set('content-type', 'application/json');
   const own = new Request(request.url, { method: 'POST', headers, body: JSON.stringify(body.value ?? {}) });
-  return path === '/sign-in/email' ? signIn(own, (body.value as { email: string }).email) : ask(own);
+  const answer = path === '/sign-in/email' ? await signIn(own, (body.value as { email: string }).email) : await ask(own);
+  if (answer.ok) await noteAccountAct(actor, path, answer);
+  return answer;
+}
+
+/** The library has its own transactions, so this entry follows the act instead of sharing one with it. */
+async function noteAccountAct(actor: Actor, path: string, answer: Response): Promise<void> {
+  const said = (await answer.clone().json().catch(() => null)) as { user?: { id?: unknown } } | null;
+  const userId = isUuid(said?.user?.id) ? said.user.id : userIdOf(actor);
+  await database().transaction((tx) => recordAudit(tx, { actor, action: `account${path.replaceAll('/', '.')}`, subjectKind: 'account', subjectId: userId }));
 }
 
 async function signIn(request: Request, address: string): Promise<Response> {

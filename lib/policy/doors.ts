@@ -31,6 +31,8 @@ export const DOORS = {
   'POST /api/v1/submissions/{id}/revise': ['submission.revise'],
   'GET /api/v1/submissions/{id}/variations': ['submission.vary'],
   'POST /api/v1/submissions/{id}/variations': ['submission.vary'],
+  'GET /api/v1/jobs/failed': ['admin.read-jobs'],
+  'POST /api/v1/jobs/{id}/retry': ['admin.retry-job'],
   'action compose.createDraft': ['submission.create'],
   'action compose.saveDraft': ['submission.edit'],
   'action compose.loadSheet': ['submission.edit'],

@@ -10,6 +10,7 @@ import { workerEnv, type WorkerEnv } from '@/lib/env';
 import { TASKS, type TaskName } from '@/lib/jobs/tasks';
 import { createS3Store } from '@/lib/storage/s3-store';
 import { endWithParent } from '@/lib/tools/process';
+import { assertDurable } from './assert-durable';
 import { HANDLERS } from './handlers/index';
 import type { HandlerRoom } from './handlers/handler';
 import { layAsideSpentJobs } from './lay-aside';
@@ -62,6 +63,7 @@ async function start(env: WorkerEnv): Promise<() => Promise<void>> {
   const stopping = new AbortController();
   const database = openDatabase(env.WORKER_DATABASE_URL, { max: 8, application_name: 'counterfoil-worker', onError: report });
   useDatabase(database);
+  if (env.NODE_ENV === 'production' && !env.DEMO) await assertDurable(database);
   const liveness = await openLiveness(env.WORKER_DATABASE_URL, (error) => {
     report(error);
     if (!stopping.signal.aborted) process.exit(1); // the supervisor starts another
