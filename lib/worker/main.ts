@@ -16,6 +16,7 @@ import type { HandlerRoom } from './handlers/handler';
 import { layAsideSpentJobs } from './lay-aside';
 import { openLiveness, type Liveness } from './liveness';
 import { quietLogger } from './log';
+import { sweepRunFolders } from './run-folder';
 import { runSheet } from './threads/run-sheet';
 
 /** Runs compete for cores; mail must not wait behind them. */
@@ -64,6 +65,7 @@ async function start(env: WorkerEnv): Promise<() => Promise<void>> {
   const database = openDatabase(env.WORKER_DATABASE_URL, { max: 8, application_name: 'counterfoil-worker', onError: report });
   useDatabase(database);
   if (env.NODE_ENV === 'production' && !env.DEMO) await assertDurable(database);
+  await sweepRunFolders().catch(report);
   const liveness = await openLiveness(env.WORKER_DATABASE_URL, (error) => {
     report(error);
     if (!stopping.signal.aborted) process.exit(1); // the supervisor starts another

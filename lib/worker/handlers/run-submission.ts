@@ -1,6 +1,4 @@
-import { mkdtemp, rm } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
-import path from 'node:path';
+import { rm } from 'node:fs/promises';
 import { findRunInputs } from '@/db/reads/runs/run';
 import type { RunFinding } from '@/db/writes/runs/record-result';
 import { startProgress } from '@/db/writes/runs/tell-progress';
@@ -11,6 +9,7 @@ import { completeRun } from '@/lib/services/runs/complete-run';
 import { digestOf } from '@/lib/services/runs/inputs-digest';
 import type { ComputeSheet } from '../compute';
 import { fetchInputs } from '../fetch-inputs';
+import { makeRunFolder } from '../run-folder';
 import { progressTeller } from '../progress-teller';
 import type { Handler, HandlerRoom } from './handler';
 
@@ -26,7 +25,7 @@ export const runSubmission: Handler = async (raw, room, attempt) => {
   if (!run) throw new Error(`there is no run ${runId}`);
   if (run.done !== null) return;
   await startProgress(room.database, { runId, submissionId: run.submissionId, doing: 'fetching the files' }, attempt);
-  const folder = await mkdtemp(path.join(tmpdir(), 'counterfoil-run-'));
+  const folder = await makeRunFolder();
   try {
     const finding = await compute(room, run, folder);
     if (!room.signal.aborted) await completeRun(room.database, run, finding);
