@@ -30,12 +30,15 @@ function normOf(s: Spectrum, response: Response, weights: BinWeights): number {
   return power(plus, weights) + (minus === null ? 0 : power(minus, weights));
 }
 
+/** Into (−π, π]. */
+const wrapped = (rad: number): number => rad - 2 * Math.PI * Math.ceil(rad / (2 * Math.PI) - 0.5);
+
 /** Turn of the cross spectrum, as the phase and polarisation that the contract names. */
 function turnsOf(request: MatchRequest, placement: Placement, turnRad: number): Pick<MatchOutcome, 'phaseShiftRad' | 'polarisationRad'> {
   const polarisation = request.maximise.includes('polarisation');
   if (request.response !== 'complex') return { phaseShiftRad: turnRad };
   const modes = request.b.waveform.content.kind === 'modes';
-  if (modes) return { phaseShiftRad: placement.azimuthShiftRad, ...(polarisation ? { polarisationRad: turnRad / 2 } : {}) };
+  if (modes) return { phaseShiftRad: wrapped(placement.azimuthShiftRad), ...(polarisation ? { polarisationRad: turnRad / 2 } : {}) };
   // h ∝ e^{−iφ}: rotating h₊ − ih× by +α delays the wave's phase by α.
   return request.maximise.includes('phase') ? { phaseShiftRad: -turnRad } : { phaseShiftRad: 0, polarisationRad: turnRad / 2 };
 }
