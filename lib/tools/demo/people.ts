@@ -1,0 +1,33 @@
+/**
+ * The demonstration: invented people of invented groups take a few claims through the whole course.
+ * Every step is the verb a person would use, and every number is computed by the engine here and now.
+ *
+ * This file: who they are. The address of everybody ends in .example, so that no letter can leave.
+ */
+import type { AccountRole } from '@/lib/policy/account-role';
+
+export interface DemoPerson {
+  /** What they are asked to do in the demonstration; printed beside their password. */
+  readonly part: string;
+  readonly name: string;
+  readonly email: string;
+  readonly affiliation: string;
+  readonly role: AccountRole;
+}
+
+const LARKFIELD = 'Larkfield Wave Group';
+const COUNTERFOIL = 'Counterfoil desk';
+
+export const DEMO_PEOPLE = {
+  marrable: { part: 'author', name: 'T. Marrable', email: 't.marrable@larkfield.example', affiliation: LARKFIELD, role: 'member' },
+  quennell: { part: 'co-author', name: 'L. Quennell', email: 'l.quennell@larkfield.example', affiliation: LARKFIELD, role: 'member' },
+  vasterling: { part: 'referee', name: 'S. Vasterling', email: 's.vasterling@northquay.example', affiliation: 'North Quay Astrophysics', role: 'member' },
+  tansley: { part: 'second referee', name: 'E. Tansley-Mbeki', email: 'e.tansley-mbeki@hollowell.example', affiliation: 'Hollowell Computation Centre', role: 'member' },
+  amsel: { part: 'editor', name: 'R. Amsel', email: 'r.amsel@counterfoil.example', affiliation: COUNTERFOIL, role: 'editor' },
+  szenthe: { part: 'administrator', name: 'I. Szenthe-Crowe', email: 'i.szenthe-crowe@counterfoil.example', affiliation: COUNTERFOIL, role: 'administrator' },
+  ondaro: { part: 'author of the loudness', name: 'M. Ondaro', email: 'm.ondaro@saltern.example', affiliation: 'Saltern Institute of Strong Gravity', role: 'member' },
+  brightwater: { part: 'author of the match', name: 'H. Brightwater', email: 'h.brightwater@oxbow.example', affiliation: 'Oxbow Relativity Unit', role: 'member' },
+  dovrel: { part: 'author of the energy', name: 'K. Dovrel', email: 'k.dovrel@hollowell.example', affiliation: 'Hollowell Computation Centre', role: 'member' },
+} as const satisfies Readonly<Record<string, DemoPerson>>;
+
+export type DemoName = keyof typeof DEMO_PEOPLE;
