@@ -2,7 +2,7 @@ import { createWriteStream, openAsBlob } from 'node:fs';
 import { mkdtemp, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
-import { PassThrough, Readable, Transform, Writable } from 'node:stream';
+import { PassThrough, Transform, Writable, type Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { BlobReader, configure, ZipReader, type FileEntry } from '@zip.js/zip.js';
 import { AppFailure } from '@/lib/services/app-error';
