@@ -53,7 +53,13 @@ function unknownQuantity(id: string, where: string, catalogue: Catalogue): Probl
   return { code: 'claims/unknown-name', where, saw: `the unknown quantity ${describe(id)}`, expected: `one of ${built.join(', ')}`, ...(hint ? { hint } : {}) };
 }
 
-/** One claimed entry a point: an array for a sweep, a single entry otherwise. */
+/** "more than 0.98 at every mass" is one inequality for a whole sweep. */
+const isBound = (claimed: unknown): boolean => typeof claimed === 'object' && claimed !== null && !Array.isArray(claimed) && ('above' in claimed || 'below' in claimed);
+
+/**
+ * One claimed entry a point: an array for a sweep, a single entry otherwise. A tolerance beside an
+ * inequality is read and has no part in its verdict (settings.md section 1).
+ */
 function parseClaimedList(raw: RawClaim, path: readonly PropertyKey[], over: Sweep | null, problems: Problem[]): Claimed[] {
   const at = [...path, 'claimed'];
   if (raw.claimed === undefined) {
@@ -61,11 +67,12 @@ function parseClaimedList(raw: RawClaim, path: readonly PropertyKey[], over: Swe
     return [];
   }
   const swept = raw.over !== undefined;
-  if (swept !== Array.isArray(raw.claimed)) {
-    problems.push({ code: 'claims/claimed', where: pointer(...at), saw: swept ? `one entry, ${describe(raw.claimed)}` : `a list, ${describe(raw.claimed)}`, expected: swept ? 'a list with one entry for each value of "over"' : 'one entry, as nothing is swept', ...(swept ? { hint: 'Repeat an inequality for each value.' } : { hint: 'Name the swept setting in "over".' }) });
+  const given = swept && isBound(raw.claimed) ? Array.from({ length: over?.values.length ?? 1 }, () => raw.claimed) : raw.claimed;
+  if (swept !== Array.isArray(given)) {
+    problems.push({ code: 'claims/claimed', where: pointer(...at), saw: swept ? `one entry, ${describe(given)}` : `a list, ${describe(given)}`, expected: swept ? 'a list with one entry for each value of "over", or one inequality for them all' : 'one entry, as nothing is swept', ...(swept ? {} : { hint: 'Name the swept setting in "over".' }) });
     return [];
   }
-  const entries: readonly unknown[] = Array.isArray(raw.claimed) ? raw.claimed : [raw.claimed];
+  const entries: readonly unknown[] = Array.isArray(given) ? given : [given];
   if (over && over.values.length > 0 && entries.length !== over.values.length)
     problems.push({ code: 'claims/claimed', where: pointer(...at), saw: `${entries.length} claimed entr${entries.length === 1 ? 'y' : 'ies'}`, expected: `${over.values.length}, one for each value of "over"` });
   const claimed = entries.flatMap((entry, i) => {
@@ -74,7 +81,5 @@ function parseClaimedList(raw: RawClaim, path: readonly PropertyKey[], over: Swe
     problems.push({ where: pointer(...at, ...(swept ? [i] : [])), ...parsed.error });
     return [];
   });
-  if (raw.tolerance !== undefined && claimed.length > 0 && claimed.every((entry) => entry.kind !== 'value'))
-    problems.push({ code: 'claims/not-allowed', where: pointer(...path, 'tolerance'), saw: describe(raw.tolerance), expected: 'no tolerance for an inequality', hint: 'State the bound itself more widely.' });
   return claimed;
 }

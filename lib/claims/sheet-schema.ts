@@ -75,7 +75,7 @@ export const claimSchema = z.strictObject({
   settings: z.record(z.string(), z.unknown(), { error: 'an object of settings' }).optional(),
   over: z.record(z.string(), z.unknown(), { error: 'an object with one swept setting' }).optional(),
   claimed: z.unknown(),
-  tolerance: finite('a tolerance of zero or more').min(0, { error: 'a tolerance of zero or more' }).optional(),
+  tolerance: finite('a tolerance of zero or more').min(0, { error: 'a tolerance of zero or more' }).nullish(),
 }, { error: 'an object that states a claim' });
 export type RawClaim = z.infer<typeof claimSchema>;
 

@@ -37,6 +37,11 @@ describe('a good sheet', () => {
     expect(parsed.value.claims[0]).toMatchObject({ id: 'C1', of: { a: 'A', b: 'B' }, noise: 'S', over: null, tolerance: null });
   });
 
+  it('may set one bound for a whole sweep, and a tolerance beside a bound changes nothing', () => {
+    const read = parseClaimSheet(withClaim(match({ settings: {}, over: { totalMassMsun: [60, 100] }, claimed: { above: 0.9 }, tolerance: 0.1 })), smallCatalogue());
+    expect(read.ok && read.value.claims[0]?.claimed).toEqual([{ kind: 'above', bound: 0.9, printed: expect.any(String) }, { kind: 'above', bound: 0.9, printed: expect.any(String) }]);
+  });
+
   it('may sweep one setting, with a claimed entry for each value', () => {
     const sweep = match({ settings: {}, over: { totalMassMsun: [60, 100] }, claimed: ['0.9', { above: 0.8 }] });
     expect(problemsOf(withClaim(sweep))).toEqual([]);
@@ -98,11 +103,10 @@ describe('a bad sheet is refused with every problem, its place, what was seen an
     ['a setting both swept and declared', withClaim(match({ over: { totalMassMsun: [60] }, claimed: [1] })), 'saw "totalMassMsun" both in "settings" and in "over"'],
     ['a swept value out of range', withClaim(match({ settings: {}, over: { totalMassMsun: [60, 0] }, claimed: [1, 1] })), '/claims/0/over/totalMassMsun/1: saw 0'],
     ['fewer claimed entries than points', withClaim(match({ settings: {}, over: { totalMassMsun: [60, 100] }, claimed: ['0.9'] })), '/claims/0/claimed: saw 1 claimed entry; expected 2, one for each value of "over".'],
-    ['one claimed entry for a sweep', withClaim(match({ settings: {}, over: { totalMassMsun: [60, 100] }, claimed: { above: 0.9 } })), 'Repeat an inequality for each value.'],
+    ['one claimed entry for a sweep', withClaim(match({ settings: {}, over: { totalMassMsun: [60, 100] }, claimed: '0.9' })), 'a list with one entry for each value of "over", or one inequality for them all'],
     ['a list where nothing is swept', withClaim(match({ claimed: [0.9] })), 'expected one entry, as nothing is swept. Name the swept setting in "over".'],
     ['no claimed value', withClaim({ ...match(), claimed: undefined }), '/claims/0/claimed: saw nothing; expected the claimed value.'],
     ['a tolerance below zero', withClaim(match({ tolerance: -0.1 })), '/claims/0/tolerance: saw -0.1; expected a tolerance of zero or more.'],
-    ['a tolerance for a bound', withClaim(match({ claimed: { above: 0.9 }, tolerance: 0.1 })), '/claims/0/tolerance: saw 0.1; expected no tolerance for an inequality.'],
     ['an id used twice', { ...good(), claims: [match(), match()] }, '/claims/1/id: saw "C1", as in claim 0; expected an id of its own for each claim.'],
     ['an angle for columns that are projected already', withClaim(match({ quantity: 'snr', of: { a: 'P' }, settings: { inclinationRad: 0.1 } })), '/claims/0/settings/inclinationRad: saw "inclinationRad" for "P"; expected no angle for strain along one line of sight'],
     ['a swept angle for such columns', withClaim(match({ quantity: 'snr', of: { a: 'P' }, settings: {}, over: { inclinationRad: [0.1] }, claimed: [1] })), '/claims/0/over/inclinationRad: saw "inclinationRad" for "P"'],
