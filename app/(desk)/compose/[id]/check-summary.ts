@@ -1,0 +1,65 @@
+import type { Finding } from '@/lib/engine/contract/finding';
+import { settingText } from './claim-fields';
+import type { Problem } from '@/lib/kernel/problem';
+import type { VerdictWord } from '@/lib/pipeline/result';
+import type { DraftView } from '@/lib/services/submissions/submission-view';
+
+export interface FoundFinding {
+  readonly finding: Finding;
+  /** Claims that share it. */
+  readonly claims: readonly string[];
+}
+
+export interface AssumedSetting {
+  readonly claim: string;
+  readonly name: string;
+  /** In the words of the form, ready to be declared. */
+  readonly value: string;
+  readonly unit: string;
+}
+
+/** The latest check as the panel shows it; the numbers themselves are drawn on the server. */
+export interface CheckSummary {
+  readonly runId: string;
+  readonly state: 'queued' | 'running' | 'stopped' | 'refused' | 'measured';
+  readonly current: boolean;
+  readonly fraction: number;
+  readonly doing: string;
+  readonly because: string | null;
+  readonly problems: readonly Problem[];
+  readonly findings: readonly FoundFinding[];
+  readonly verdicts: readonly { readonly id: string; readonly verdict: VerdictWord }[];
+  readonly assumed: readonly AssumedSetting[];
+}
+
+const order = ['stops-lodging', 'needs-answer', 'worth-a-look', 'note'];
+
+export function checkSummary(check: DraftView['check']): CheckSummary | null {
+  if (!check) return null;
+  const { run, current } = check;
+  const claims = run.state === 'measured' ? run.result.claims : [];
+  return {
+    runId: run.id,
+    state: run.state,
+    current,
+    fraction: run.state === 'queued' || run.state === 'running' ? run.fraction : 1,
+    doing: run.state === 'queued' || run.state === 'running' ? run.doing : '',
+    because: run.state === 'stopped' ? run.because : null,
+    problems: run.state === 'refused' ? run.problems : [],
+    findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))),
+    verdicts: claims.map(({ id, verdict }) => ({ id, verdict })),
+    assumed: claims.flatMap((c) => c.settings.filter((s) => s.standing === 'assumed' && s.value !== null).map((s) => ({ claim: c.id, name: s.name, value: settingText(s.value), unit: s.unit ?? '' }))),
+  };
+}
+
+/** A finding about a file is told once, however many claims use the file. */
+function grouped(all: readonly { readonly finding: Finding; readonly claim: string }[]): readonly FoundFinding[] {
+  const byText = new Map<string, { finding: Finding; claims: string[] }>();
+  for (const { finding, claim } of all) {
+    const key = JSON.stringify(finding);
+    const seen = byText.get(key);
+    if (seen) seen.claims.push(claim);
+    else byText.set(key, { finding, claims: [claim] });
+  }
+  return [...byText.values()].sort((a, b) => order.indexOf(a.finding.level) - order.indexOf(b.finding.level));
+}

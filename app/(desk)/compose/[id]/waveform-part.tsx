@@ -1,0 +1,98 @@
+'use client';
+import type { UseFormReturn } from 'react-hook-form';
+import { useFieldArray } from 'react-hook-form';
+import { toast } from 'sonner';
+import { Button } from '@/app/_ui/primitives/button';
+import { SelectField, TextField } from '@/app/_ui/primitives/control';
+import { Disclosure } from '@/app/_ui/primitives/disclosure';
+import { EmptyState } from '@/app/_ui/primitives/page-state';
+import { emptyWaveform, type ComposerFields } from './fields';
+import { errorAt } from './form-error';
+
+export type ComposerForm = UseFormReturn<ComposerFields>;
+
+/** What stands when nothing is chosen, said in the box itself: `assumed: M`. */
+interface Choice {
+  readonly field: 'domain' | 'variable' | 'timeUnit' | 'amplitudeUnit' | 'polarisation' | 'negativeM';
+  readonly label: string;
+  readonly assumed: string;
+  readonly options: readonly string[];
+}
+const choices: readonly Choice[] = [
+  { field: 'domain', label: 'Domain', assumed: 'time', options: ['time', 'frequency'] },
+  { field: 'variable', label: 'Variable', assumed: 'strain', options: ['strain', 'news', 'psi4'] },
+  { field: 'timeUnit', label: 'Unit of the first column', assumed: 'M', options: ['M', 's', '1/M', 'Hz'] },
+  { field: 'amplitudeUnit', label: 'Amplitude', assumed: 'rh/M', options: ['rh/M', 'strain'] },
+  { field: 'polarisation', label: 'Sign of cross', assumed: 'plus-minus-i-cross', options: ['plus-minus-i-cross', 'plus-plus-i-cross'] },
+  { field: 'negativeM', label: 'Modes with m < 0', assumed: 'given if any is in the file, else mirror', options: ['mirror', 'given', 'none'] },
+];
+
+const layouts: readonly (readonly [string, string])[] = [
+  ['t re im', 'one mode: real and imaginary part'],
+  ['t amplitude phase', 'one mode: amplitude and phase'],
+  ['t plus cross', 'along a line of sight: plus and cross'],
+  ['t plus', 'along a line of sight: plus alone'],
+  ['t re22 im22', 'mode set: name each pair with its mode'],
+];
+
+export function WaveformsPart({ form, files }: { readonly form: ComposerForm; readonly files: readonly string[] }) {
+  const rows = useFieldArray({ control: form.control, name: 'waveforms', keyName: 'key' });
+  const add = () => rows.append(emptyWaveform(nextName(form.getValues('waveforms').map((w) => w.name)), files.find((f) => !form.getValues('waveforms').some((w) => w.file === f) && !form.getValues('noise').some((n) => n.file === f)) ?? ''));
+  const remove = (index: number) => {
+    const gone = form.getValues(`waveforms.${index}`);
+    rows.remove(index);
+    toast(`Waveform ${gone.name} is removed.`, { action: { label: 'Undo', onClick: () => rows.insert(index, gone) } });
+  };
+  return (
+    <div className="grid gap-4">
+      {rows.fields.length === 0 && <EmptyState level={3} title="No waveform yet">Add a file above, then say here what stands in its columns.</EmptyState>}
+      {rows.fields.map((row, i) => <WaveformRow key={row.key} form={form} index={i} files={files} onRemove={() => remove(i)} />)}
+      <div><Button onClick={add}>Declare a waveform</Button></div>
+    </div>
+  );
+}
+
+const nextName = (taken: readonly string[]): string => [...'ABCDEFGHJKLMNOPQRTUVWXYZ'].find((n) => !taken.includes(n)) ?? `W${taken.length + 1}`;
+
+function WaveformRow({ form, index, files, onRemove }: { readonly form: ComposerForm; readonly index: number; readonly files: readonly string[]; readonly onRemove: () => void }) {
+  const { register, watch } = form;
+  const at = `waveforms.${index}` as const;
+  const { name, rest } = watch(at);
+  const several = typeof rest.files === 'object' && rest.files !== null ? Object.entries(rest.files as Record<string, string>) : [];
+  return (
+    <fieldset className="grid gap-3 rounded border border-hair-2 bg-sheet px-4 py-3">
+      <legend className="px-1 text-small font-semibold">Waveform {name}</legend>
+      <div className="grid gap-3 sm:grid-cols-[110px_minmax(0,1fr)_minmax(0,1fr)]">
+        <TextField label="Name" error={errorAt(form, `${at}.name`)} {...register(`${at}.name`)} />
+        {several.length > 0 ? (
+          <p className="text-ui"><span className="block text-small font-semibold">Files, one a mode</span>{several.map(([mode, file]) => `(${mode}) ${file}`).join(', ')}</p>
+        ) : (
+          <SelectField label="File" {...register(`${at}.file`)}><option value="">choose a file</option>{files.map((f) => <option key={f}>{f}</option>)}</SelectField>
+        )}
+        <TextField label="Columns, in order" list="layouts" autoComplete="off" spellCheck={false} hint="t or f first; _ skips one" {...register(`${at}.columns`)} />
+      </div>
+      <datalist id="layouts">{layouts.map(([value, words]) => <option key={value} value={value}>{words}</option>)}</datalist>
+      <div className="grid gap-3 sm:grid-cols-3">
+        {choices.map((c) => (
+          <SelectField key={c.field} label={c.label} {...register(`${at}.${c.field}`)}>
+            <option value="">assumed: {c.assumed}</option>
+            {c.options.map((o) => <option key={o}>{o}</option>)}
+          </SelectField>
+        ))}
+      </div>
+      <Disclosure summary="Mode, own mass and distance, binary">
+        <div className="grid gap-3 sm:grid-cols-4">
+          <TextField label="Mode ℓ,m" placeholder="assumed: 2,2" {...register(`${at}.mode`)} />
+          <TextField label="Own total mass, M⊙" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.totalMassMsun`)} {...register(`${at}.totalMassMsun`)} />
+          <TextField label="Own distance, Mpc" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.distanceMpc`)} {...register(`${at}.distanceMpc`)} />
+          <TextField label="Factor of ψ₄" placeholder="assumed: 1" inputMode="decimal" error={errorAt(form, `${at}.psi4Factor`)} {...register(`${at}.psi4Factor`)} />
+          <TextField label="End of start-up burst, M" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.junkEndM`)} {...register(`${at}.junkEndM`)} />
+          <TextField label="Mass ratio q ≥ 1" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.massRatio`)} {...register(`${at}.massRatio`)} />
+          <TextField label="Spin χ₁z" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.chi1z`)} {...register(`${at}.chi1z`)} />
+          <TextField label="Spin χ₂z" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.chi2z`)} {...register(`${at}.chi2z`)} />
+        </div>
+      </Disclosure>
+      <div><Button size="low" tone="quiet" onClick={onRemove}>Remove this waveform</Button></div>
+    </fieldset>
+  );
+}
