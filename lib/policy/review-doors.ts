@@ -20,6 +20,7 @@ export const REVIEW_DOORS = {
   'action review.inviteReferee': ['review.invite'],
   'action review.withdrawInvitation': ['review.invite'],
   'action review.answerInvitation': ['review.answer-invitation'],
+  'action review.remind': ['review.invite'],
   'action review.sendToReview': ['review.begin'],
   'action review.beginDeciding': ['review.call-for-decision'],
   'action review.openThread': ['review.open-thread'],

@@ -3,35 +3,35 @@ import Link from 'next/link';
 import type { Route } from 'next';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
-import { Table } from '@/app/_ui/primitives/table';
 import { formatDay } from '@/app/views/dates';
 import { loadFor } from '@/lib/http/page-guard';
 import { listOwnInvitations } from '@/lib/services/reviews/list-own-invitations';
 import type { OwnInvitationView } from '@/lib/services/reviews/invitation-view';
+import { Cell, HeadCell, StackedRow, StackedTable } from '../stacked-table';
 
 export const metadata: Metadata = { title: 'Desk' };
 
+const titleLook = 'font-serif text-[17px] font-semibold text-ink';
+
 function Asked({ invitation }: { readonly invitation: OwnInvitationView }) {
   return (
-    <tr>
-      <th scope="row"><Link href={`/desk/invitations/${invitation.id}` as Route}>{invitation.title}</Link></th>
-      <td>{invitation.authors.join(', ')}</td>
-      <td>{invitation.quantities.join(', ') || 'not computed yet'}</td>
-      <td>by {formatDay(invitation.answerBy)}</td>
-      <td className="text-right"><LinkButton href={`/desk/invitations/${invitation.id}`} size="low" tone="main">Answer</LinkButton></td>
-    </tr>
+    <StackedRow>
+      <HeadCell><Link className={titleLook} href={`/desk/invitations/${invitation.id}` as Route}>{invitation.title}</Link><p className="text-small text-ink-2">{invitation.authors.join(', ')}</p></HeadCell>
+      <Cell>{invitation.quantities.join(', ') || 'not computed yet'}</Cell>
+      <Cell>by {formatDay(invitation.answerBy)}</Cell>
+      <Cell last><LinkButton href={`/desk/invitations/${invitation.id}`} size="low" tone="main">Answer<span className="sr-only">: {invitation.title}</span></LinkButton></Cell>
+    </StackedRow>
   );
 }
 
 function Reviewing({ invitation }: { readonly invitation: OwnInvitationView }) {
   return (
-    <tr>
-      <th scope="row"><Link href={`/review/${invitation.submissionId}` as Route}>{invitation.title}</Link></th>
-      <td>{invitation.authors.join(', ')}</td>
-      <td>{invitation.quantities.join(', ')}</td>
-      <td>{invitation.stateWords}</td>
-      <td className="text-right"><LinkButton href={`/review/${invitation.submissionId}`} size="low">Open</LinkButton></td>
-    </tr>
+    <StackedRow>
+      <HeadCell><Link className={titleLook} href={`/review/${invitation.submissionId}` as Route}>{invitation.title}</Link><p className="text-small text-ink-2">{invitation.authors.join(', ')}</p></HeadCell>
+      <Cell>{invitation.quantities.join(', ')}</Cell>
+      <Cell>{invitation.stateWords}</Cell>
+      <Cell last><LinkButton href={`/review/${invitation.submissionId}`} size="low">Open<span className="sr-only">: {invitation.title}</span></LinkButton></Cell>
+    </StackedRow>
   );
 }
 
@@ -47,11 +47,10 @@ function List({ id, title, last, rows, Row }: ListProps) {
   if (rows.length === 0) return null;
   return (
     <section aria-labelledby={id}>
-      <h2 id={id} className="mb-2">{title} <span className="text-ink-2">{rows.length}</span></h2>
-      <Table caption={title}>
-        <thead><tr><th scope="col">Submission</th><th scope="col">Authors</th><th scope="col">Quantities</th><th scope="col">{last}</th><th scope="col"><span className="sr-only">Next step</span></th></tr></thead>
-        <tbody>{rows.map((row) => <Row key={row.id} invitation={row} />)}</tbody>
-      </Table>
+      <h2 id={id} className="mb-2">{title} <span className="font-sans text-ui font-normal text-ink-2">{rows.length}</span></h2>
+      <StackedTable caption={title} columns={[{ title: 'Submission' }, { title: 'Quantities', width: 'lg:w-[220px]' }, { title: last, width: 'lg:w-[190px]' }, { title: 'Next step', width: 'lg:w-[120px]', hidden: true }]}>
+        {rows.map((row) => <Row key={row.id} invitation={row} />)}
+      </StackedTable>
     </section>
   );
 }

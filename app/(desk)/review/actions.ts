@@ -9,6 +9,7 @@ import { handInReport as handIn } from '@/lib/services/reviews/hand-in-report';
 import { inviteReferee as invite } from '@/lib/services/reviews/invite-referee';
 import { noteToEditor as note } from '@/lib/services/reviews/note-to-editor';
 import { openThread as open } from '@/lib/services/reviews/open-thread';
+import { remind as remindThem } from '@/lib/services/reviews/remind';
 import { replyToThread } from '@/lib/services/reviews/reply-to-thread';
 import { closingInput, decisionInput, invitationAnswerInput, invitationInput, noteInput, replyInput, reportInput, threadInput } from '@/lib/services/reviews/review-inputs';
 import { sendToReview as send } from '@/lib/services/reviews/send-to-review';
@@ -27,6 +28,14 @@ export const inviteReferee = defineAction({
 });
 
 export const withdrawInvitation = defineAction({ door: 'action review.withdrawInvitation', input: onlyId, handle: ({ actor, input }) => withdraw(actor, input.id) });
+
+/** A door that sends letters stays narrow. */
+export const remind = defineAction({
+  door: 'action review.remind',
+  input: onlyId,
+  rate: { points: 60, perS: 3600 },
+  handle: ({ actor, input }) => remindThem(actor, input.id),
+});
 
 export const answerInvitation = defineAction({
   door: 'action review.answerInvitation',

@@ -5,6 +5,7 @@ import { SelectField, TextareaField } from '@/app/_ui/primitives/control';
 import { Tag } from '@/app/_ui/primitives/tag';
 import { formatDay, formatInstant } from '@/app/views/dates';
 import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
+import { placeText } from '@/app/views/place-text';
 import { THREAD_KIND_WORDS, THREAD_STATE_WORDS, type Closing } from '@/lib/reviews/threads';
 import type { CommentView, ThreadView } from '@/lib/services/reviews/thread-view';
 import { Trouble } from '../../act-parts';
@@ -55,7 +56,7 @@ function Comment({ comment, body }: { readonly comment: CommentView; readonly bo
       {variation && (
         <div className="mt-2 rounded border border-dashed border-control px-3 py-2 text-ui">
           <p className="font-semibold">Variation: {variation.changes.join(', ')}</p>
-          {variation.points.map((point, i) => <p key={i}>{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official {formatWithUncertainty(point.official, null, variation.unit).replace(' ± unknown', '')})</span>}</p>)}
+          {variation.points.map((point, i) => <p key={i}>{variation.points.length > 1 && `${placeText(point.at)}: `}{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official {formatWithUncertainty(point.official, null, variation.unit).replace(' ± unknown', '')})</span>}</p>)}
           <p className="text-small text-ink-2">A rerun with other settings. It changes no number of the record.</p>
         </div>
       )}

@@ -1,13 +1,14 @@
 'use client';
 import { useRouter } from 'next/navigation';
-import { useEffect, useState } from 'react';
+import { useEffect, useState, type ReactNode } from 'react';
 import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { Table } from '@/app/_ui/primitives/table';
 import { formatProblem } from '@/lib/kernel/problem';
-import type { ResultPoint } from '@/lib/pipeline/result';
+import { placeText } from '@/app/views/place-text';
+import type { ResultDocument, ResultPoint } from '@/lib/pipeline/result';
 import type { VariationView } from '@/lib/services/variations/variation-view';
 import { requestVariation } from '../../compose/actions';
 import { Trouble } from '../../act-parts';
@@ -98,12 +99,24 @@ function Results({ own, unit, points }: VariationPanelProps) {
   );
 }
 
-function outcome({ run }: VariationView, unit: string): string {
+function outcome({ run }: VariationView, unit: string): ReactNode {
   switch (run.state) {
     case 'queued': return 'waiting for a worker';
     case 'running': return `${Math.round(run.fraction * 100)} %${run.doing ? `, ${run.doing}` : ''}`;
     case 'stopped': return run.because;
     case 'refused': return run.problems.map(formatProblem).join(' ');
-    case 'measured': return run.result.claims.flatMap((c) => c.points.map((p) => formatWithUncertainty(p.value, p.expandedUncertainty, unit) + (p.value === null ? `: ${c.findings.filter((f) => f.level === 'stops-lodging').map((f) => f.text).join(' ')}` : ''))).join('; ');
+    case 'measured': return <Measured result={run.result} unit={unit} />;
   }
+}
+
+/** One line a point, with its place on the sweep; where nothing could be computed, what stopped it. */
+function Measured({ result, unit }: { readonly result: ResultDocument; readonly unit: string }) {
+  const lines = result.claims.flatMap((claim) =>
+    claim.points.map((p) => {
+      const place = claim.points.length > 1 ? `${placeText(p.at)}: ` : '';
+      const stops = p.value === null ? `: ${claim.findings.filter((f) => f.level === 'stops-lodging').map((f) => f.text).join(' ')}` : '';
+      return place + formatWithUncertainty(p.value, p.expandedUncertainty, unit) + stops;
+    }),
+  );
+  return lines.map((line) => <p key={line}>{line}</p>);
 }
