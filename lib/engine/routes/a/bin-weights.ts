@@ -185,10 +185,12 @@ export function glanceAtEdges(weigher: NoiseWeigher, range: BinRange): Glance | 
     { length: Math.max(0, Math.floor((inHigh - inLow + 1 - GLANCE_RUN) / every) + 1) },
     (_, i) => inLow + i * every,
   );
-  const values = new Float64Array(GLANCE_RUN * starts.length);
+  const n = GLANCE_RUN * starts.length;
   const logs = logBins(frame.last);
-  const offset = Math.log(range.dfHz);
-  starts.forEach((k, i) => weigher.fill(values.subarray(GLANCE_RUN * i, GLANCE_RUN * (i + 1)), logs, k, k + GLANCE_RUN - 1, offset));
+  const sampled = new Float64Array(n);
+  for (let i = 0; i < n; i++) sampled[i] = logs[starts[Math.floor(i / GLANCE_RUN)]! + (i % GLANCE_RUN)]!;
+  const values = new Float64Array(n);
+  if (n > 0) weigher.fill(values, sampled, 0, n - 1, Math.log(range.dfHz));
   const sum = (power: Float64Array): number => {
     let total = 0;
     for (let i = 0; i < starts.length; i++)
