@@ -1,6 +1,6 @@
 import { getAuthTables } from 'better-auth/db';
 import { getTableColumns } from 'drizzle-orm';
-import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { closeDatabase, database, openDatabase, useDatabase } from '@/db/client';
 import { accounts, rateLimits, sessions, users, verifications } from '@/db/schema/accounts';
 import { createAuth } from '@/lib/auth/auth';
@@ -13,6 +13,8 @@ import { freshDatabase, type FreshDatabase } from '../../support/database';
 
 const ORIGIN = 'http://127.0.0.1:3210';
 const PASSWORD = 'seven quiet herons';
+// One hash takes 128 MiB and, on a busy machine, seconds.
+vi.setConfig({ testTimeout: 180_000 });
 let db: FreshDatabase;
 
 beforeAll(async () => {

@@ -45,7 +45,7 @@ async function end(worker: ChildProcess, signal: NodeJS.Signals = 'SIGKILL'): Pr
 }
 
 async function until<T>(look: () => Promise<T | undefined | false>, what: string): Promise<T> {
-  for (let i = 0; i < 1200; i++) {
+  for (let i = 0; i < 2400; i++) {
     const seen = await look();
     if (seen) return seen;
     await new Promise((resolve) => setTimeout(resolve, 50));
@@ -79,7 +79,7 @@ describe('a worker killed in the middle of a run', () => {
     expect(await desk.sql(`select count(*)::int as n from audit_entries where action = 'run.finish-check' and subject_id = $1`, id)).toEqual([{ n: 1 }]);
     expect(must(await getDraft(author, id)).state).toBe('draft');
     await until(async () => (await jobsLeft()) === 0, 'an empty queue');
-  }, 90_000);
+  }, 300_000);
 
   it('three times in a row is laid aside: the author gets the draft back, the administrator a row', async () => {
     const { id, runId } = await longDraft();
@@ -94,7 +94,7 @@ describe('a worker killed in the middle of a run', () => {
     const draft = must(await getDraft(author, id));
     expect([draft.state, draft.check?.run.state]).toEqual(['draft', 'stopped']);
     expect(await jobsLeft()).toBe(0);
-  }, 120_000);
+  }, 400_000);
 });
 
 describe('a worker told to stop in the middle of a run', () => {
@@ -107,7 +107,7 @@ describe('a worker told to stop in the middle of a run', () => {
     expect(jobs.rows).toEqual([{ attempts: 0, locked_by: null }]);
     startWorker();
     expect(await ended(runId)).toMatchObject({ state: 'finished' });
-  }, 90_000);
+  }, 300_000);
 });
 
 describe('an input that is not what was uploaded', () => {
@@ -119,5 +119,5 @@ describe('an input that is not what was uploaded', () => {
     expect(await desk.sql('select 1 from run_results where run_id = $1', runId)).toEqual([]);
     const [failed] = await desk.sql<{ last_error: string }>('select last_error from failed_jobs where payload->>\'runId\' = $1', runId);
     expect(failed?.last_error).toMatch(/the store gave bytes with SHA-256/);
-  }, 90_000);
+  }, 300_000);
 });
