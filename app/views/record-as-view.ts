@@ -7,7 +7,7 @@ import type { ReportView as HandedIn } from '@/lib/services/reviews/report-view'
 import type { LodgedView } from '@/lib/services/submissions/submission-view';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
-import { headingsOfResult } from './sheet-headings';
+import { headingsOfResult, noSheet } from './sheet-headings';
 
 /** What was signed, in the shape of a result: the page shows the record's own numbers and no others. */
 const resultOf = (document: RecordDocument): ResultDocument => ({
@@ -62,7 +62,7 @@ export function recordAsView(record: PublishedRecord, lodged: LodgedView | null)
     revisions: [],
     engine: document.engine,
     facts: [`revision ${document.revision}`, `lapses ${formatDay(document.lapsesAt)} unless rerun`],
-    claims: headingsOfResult(document.claims, lodged?.revision.sheet.claims ?? []),
+    claims: headingsOfResult(document.claims, lodged?.revision.sheet ?? noSheet),
     run: { state: 'done', finishedOn: lodged?.run?.state === 'measured' ? formatDay(lodged.run.finishedAt) : null, resultSha256: digest },
     result: resultOf(document),
     figures: {},

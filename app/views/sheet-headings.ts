@@ -28,20 +28,41 @@ function pointsOf(claim: Loose, isLn: boolean): readonly ClaimedPoint[] {
   return claimed.map((raw, i) => ({ at: over && typeof values[i] === 'number' ? { [over[0]]: values[i] } : {}, printed: printedOf(raw), tolerance }));
 }
 
-const wordsOf = (claim: Loose | undefined) => ({ of: isLoose(claim?.['of']) ? claim['of'] : undefined, noise: text(claim?.['noise']) });
+/** The parts of a sheet from which headings take their words. */
+interface SheetParts {
+  readonly waveforms: Readonly<Record<string, Loose>>;
+  readonly noise: Readonly<Record<string, Loose>>;
+  readonly claims: readonly Loose[];
+}
+
+const filesIn = (part: Loose | undefined): readonly string[] => {
+  const many = isLoose(part?.['files']) ? Object.values(part['files']) : [];
+  return [part?.['file'], ...many].filter((name): name is string => typeof name === 'string');
+};
+
+/** Names of waveforms and curve, and the files they stand in. */
+function wordsOf(claim: Loose | undefined, sheet: SheetParts) {
+  const of = isLoose(claim?.['of']) ? claim['of'] : undefined;
+  const noise = text(claim?.['noise']);
+  const names = Object.values(of ?? {}).filter((name): name is string => typeof name === 'string');
+  const files = [...names.flatMap((name) => filesIn(sheet.waveforms[name])), ...(noise ? filesIn(sheet.noise[noise]) : [])];
+  return { of, noise, ...(files.length > 0 ? { files: [...new Set(files)] } : {}) };
+}
 
 /** Headings before any run: all from the sheet, complete or not. */
-export function headingsOfSheet(claims: readonly Loose[]): readonly ClaimHeading[] {
-  return claims.map((claim, i) => {
+export function headingsOfSheet(sheet: SheetParts): readonly ClaimHeading[] {
+  return sheet.claims.map((claim, i) => {
     const id = text(claim['id']) ?? `C${i + 1}`;
     const name = text(claim['quantity']) ?? 'quantity not chosen';
     const quantity = quantities.get(name) ?? null;
     const empty: ResultClaim = { id, quantity: name, unit: quantity?.unit ?? '', verdict: 'not-computable', remarks: [], coverage: { state: 'unknown' }, points: [], budget: [], assumed: [], settings: [], routeB: [], findings: [], candidates: [] };
-    return { ...headingOf(empty, quantity, wordsOf(claim)), points: pointsOf(claim, quantity?.scale === 'ln') };
+    return { ...headingOf(empty, quantity, wordsOf(claim, sheet)), points: pointsOf(claim, quantity?.scale === 'ln') };
   });
 }
 
+export const noSheet: SheetParts = { waveforms: {}, noise: {}, claims: [] };
+
 /** Headings of what was computed; the sheet adds the names of waveforms and curve. */
-export function headingsOfResult(claims: readonly Omit<ResultClaim, 'candidates'>[], sheet: readonly Loose[]): readonly ClaimHeading[] {
-  return claims.map((claim) => headingOf(claim, quantities.get(claim.quantity) ?? null, wordsOf(sheet.find((c) => c['id'] === claim.id))));
+export function headingsOfResult(claims: readonly Omit<ResultClaim, 'candidates'>[], sheet: SheetParts): readonly ClaimHeading[] {
+  return claims.map((claim) => headingOf(claim, quantities.get(claim.quantity) ?? null, wordsOf(sheet.claims.find((c) => c['id'] === claim.id), sheet)));
 }

@@ -43,7 +43,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     revisions: revisions.map((r) => ({ label: `Revision ${r.number}`, href: `?revision=${r.number}`, current: r.number === revision.number })),
     engine: run?.engine ?? null,
     facts: [`revision ${revision.number}`, ...(revision.lodgedAt ? [`lodged ${formatDay(revision.lodgedAt)}`] : [])],
-    claims: result ? headingsOfResult(result.claims, revision.sheet.claims) : headingsOfSheet(revision.sheet.claims),
+    claims: result ? headingsOfResult(result.claims, revision.sheet) : headingsOfSheet(revision.sheet),
     run: runAsView(run),
     result,
     figures: extra.figures ?? {},

@@ -90,7 +90,7 @@ function Key({ figure }: { readonly figure: Figure }) {
   return (
     <span className="flex flex-wrap gap-x-4 gap-y-0.5 font-normal text-ink-2">
       {figure.series.filter((s) => s.role !== 'band-low' && s.role !== 'band-high').map((s) => (
-        <span key={s.label + s.role} className="whitespace-nowrap">
+        <span key={s.label + s.role} className="min-w-0">
           <svg viewBox="0 0 24 8" aria-hidden="true" className="mr-1.5 inline-block h-2 w-6">
             {drawnAsPoints(figure, s) ? (
               <circle cx="12" cy="4" r="3" fill="none" strokeWidth="2" stroke={`var(--${colourOf(s)})`} />
@@ -123,7 +123,7 @@ export function Plot({ claimId, figure, stills }: { readonly claimId: string; re
     moveTo(next);
   };
   return (
-    <figure className="grid min-w-0 content-start gap-1.5 text-small">
+    <figure className="grid min-w-0 grid-cols-[minmax(0,1fr)] content-start gap-1.5 text-small">
       <figcaption className="flex flex-wrap items-baseline gap-x-4 gap-y-0.5 font-semibold"><span>{figure.title}</span><Key figure={figure} /></figcaption>
       <div
         role="slider"

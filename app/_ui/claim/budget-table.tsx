@@ -23,10 +23,10 @@ function Lines({ group, unit }: { readonly group: BudgetGroup; readonly unit: st
       <th scope="row" className="font-normal!">{line.component}</th>
       <td className="num">{line.u === null ? '—' : <NumberCell value={line.u} significant={2} unit={unit} />}</td>
       {line.share === null ? (
-        <td colSpan={2}><Unknown>not available, not zero</Unknown> {line.note}</td>
+        <td colSpan={2}><Unknown>not available, not zero</Unknown> {line.note.replace(/^not available: /i, '')}</td>
       ) : (
         <>
-          <td className="w-1/4"><Share share={line.share} hatched={group.group === 'coverage'} /></td>
+          <td className="w-1/4 max-sm:hidden!"><Share share={line.share} hatched={group.group === 'coverage'} /></td>
           <td>{line.note}</td>
         </>
       )}
@@ -54,7 +54,7 @@ export function BudgetTable({ claim }: { readonly claim: ResultClaim }) {
   const coverage = budgetGroup(claim.budget, 'coverage');
   return (
     <Table caption={`Components of the uncertainty of ${claim.id} at its worst point, in two groups`}>
-      <thead><tr><th scope="col">Component</th><th scope="col" className="num">Size, <i>k</i> = 1</th><th scope="col">Share</th><th scope="col">How estimated</th></tr></thead>
+      <thead><tr><th scope="col">Component</th><th scope="col" className="num">Size, <i>k</i> = 1</th><th scope="col" className="max-sm:hidden">Share</th><th scope="col">How estimated</th></tr></thead>
       <tbody>
         <GroupHead>Of the computation: this makes <i>U</i></GroupHead>
         <Lines group={computation} unit={claim.unit} />

@@ -101,7 +101,8 @@ function Tolerance({ claimed, ln, plain, unit }: { readonly claimed: ClaimedPoin
   if (/^[<>≤≥]/.test(claimed.printed)) return <span className="whitespace-normal">a bound has none</span>;
   if (claimed.tolerance === null) return <span className="whitespace-normal">natural</span>;
   if (ln) return <NumberCell value={Math.expm1(claimed.tolerance) * 100} significant={2} unit="%" />;
-  return <NumberCell value={claimed.tolerance} plain={plain && claimed.tolerance >= 1e-7} unit={unit} />;
+  // Three digits: the rest of a natural tolerance is arithmetic, not a promise.
+  return <NumberCell value={Number(claimed.tolerance.toPrecision(3))} plain={plain && claimed.tolerance >= 1e-6} unit={unit} />;
 }
 
 function Recomputed({ point, unit, style, waiting }: { readonly point: PointOnScreen; readonly unit: string; readonly style: ReadingStyle; readonly waiting: string | null }) {

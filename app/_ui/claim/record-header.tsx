@@ -4,8 +4,6 @@ import type { ReactNode } from 'react';
 import { Icon } from '../primitives/icon';
 import type { RecordPerson, RecordView } from './record-view';
 
-const dot = <span aria-hidden>·</span>;
-
 /** An authenticated iD is shown with its sign and whole address; a typed-in one says that it is. */
 function Person({ person }: { readonly person: RecordPerson }) {
   const address = person.orcid ? `https://orcid.org/${person.orcid}` : null;
@@ -50,8 +48,7 @@ export function RecordHeader({ view, trail, actions }: RecordHeaderProps) {
           {affiliations(view.people).length > 0 && <span className="text-ink-2">{affiliations(view.people).join(', ')}</span>}
         </p>
         <p className="mt-2 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-ui text-ink-2">
-          <span>{view.state}</span>
-          {view.facts.map((fact, i) => <span key={i} className="flex gap-2.5">{dot}<span>{fact}</span></span>)}
+          {[view.state, ...view.facts].map((fact, i, all) => <span key={fact} className="flex gap-2.5">{fact}{i < all.length - 1 && <span aria-hidden>·</span>}</span>)}
         </p>
         {view.revisions.length > 1 && (
           <nav aria-label="Revisions" className="mt-2 flex flex-wrap gap-x-3 text-ui">

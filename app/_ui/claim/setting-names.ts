@@ -1,5 +1,5 @@
 /** Settings in words: how each name of the sheet is labelled, in which unit, and how its value is printed. */
-import { formatNumber } from '../math/format-number';
+import { formatNumber, readable } from '../math/format-number';
 import { unitText } from '../math/units';
 
 interface SettingWords {
@@ -57,7 +57,7 @@ function listText(list: readonly unknown[]): string {
 
 function bare(value: unknown): string {
   if (value === null || value === undefined) return 'not given';
-  if (typeof value === 'number') return formatNumber(value);
+  if (typeof value === 'number') return readable(value);
   if (value === true) return 'yes';
   if (value === false) return 'no';
   if (typeof value === 'string') return value;

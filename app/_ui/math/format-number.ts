@@ -68,11 +68,12 @@ export function numberParts(value: number, style: NumberStyle = {}): NumberParts
   const size = Math.abs(value);
   const signed = style.signed ?? false;
   const outside = size !== 0 && ((size < smallestPlain && !style.plain) || size >= largestPlain);
+  if (size === 0 && style.decimals === undefined) return { sign: '', integer: '0', fraction: '', exponent: null };
   if (style.decimals === undefined && style.significant === undefined) {
     return outside ? scientific(value, significantDigits(value), signed) : shortest(value, signed);
   }
   if (outside) return scientific(value, style.significant ?? significantAt(size, style.decimals ?? 0), signed);
-  const decimals = style.decimals ?? decimalsFor(size === 0 ? 1 : size, style.significant ?? 1);
+  const decimals = style.decimals ?? decimalsFor(size, style.significant ?? 1);
   const digits = size.toFixed(Math.min(mostDecimals, decimals));
   return { sign: signOf(value, digits, signed), ...split(digits), exponent: null };
 }
@@ -89,6 +90,9 @@ export function partsText(parts: NumberParts): string {
   const mantissa = parts.fraction ? `${parts.integer}.${parts.fraction}` : parts.integer;
   return `${parts.sign}${mantissa}${parts.exponent === null ? '' : ` × ${powerOfTen(parts.exponent)}`}`;
 }
+
+/** A computed value for a line of text: as many digits as it has, but none of the noise of binary fractions. */
+export const readable = (value: number, most = 8): string => formatNumber(significantDigits(value) > most ? Number(value.toPrecision(most)) : value);
 
 /** The number as one line of text: labels, readouts, anchors of threads. */
 export function formatNumber(value: number | null, style: NumberStyle = {}): string {
