@@ -15,16 +15,23 @@ const LEAST_Z = 1e-3;
 const MOST_Z = 50;
 const SCAN_POINTS = 400;
 const ROOT = 1e-8;
-/** Route B solves on fewer points of its own and bends a spline through them. */
-const OWN_POINTS = 72;
+/** Route B solves on fewer points of its own, evenly spaced in ln(1 + z/0.1), and bends cubics through ln ρ between them. */
+const OWN_POINTS = 40;
+const OWN_SCALE = 0.1;
+const FINE = 10;
 
 const none: Horizon = { distanceMpc: Number.NaN, redshift: Number.NaN, roots: [] };
 
-/** ρ[(1+z)M, D_L(z)] − ρ*, in units of ρ*, taken as a logarithm so that a secant sees nearly a straight line. */
-function excess(route: DetectorRoute, request: PointRequest, z: number): number {
+/** ρ of the redshifted mass at 1 Mpc; 0 when its samples carry nothing in the band. */
+function loudnessAt(route: DetectorRoute, request: PointRequest, z: number): number {
   const point = pointAtRedshift(request, z, 1);
-  const rho = point.band.fHighHz > point.band.fLowHz ? loudness(route, point.a, point) : 0;
-  return Math.log(rho / luminosityDistanceMpc(z, point.cosmology) / point.threshold);
+  return point.band.fHighHz > point.band.fLowHz ? loudness(route, point.a, point) : 0;
+}
+
+/** ln(ρ[(1+z)M, D_L(z)]/ρ*): a logarithm, so that a secant sees nearly a straight line. */
+function excess(route: DetectorRoute, request: PointRequest, z: number): number {
+  const { cosmology, threshold } = detectorPoint(request);
+  return Math.log(loudnessAt(route, request, z) / luminosityDistanceMpc(z, cosmology) / threshold);
 }
 
 /** Bisection with secant steps between two ends of opposite sign. */
@@ -75,12 +82,21 @@ function cubicAt(values: readonly number[], place: number): number {
   return b + x * (c - a / 3 - b / 2 - d / 6 + x * ((a + c) / 2 - b + (x * (3 * (b - c) + d - a)) / 6));
 }
 
-/** Route B: its own loudness at fewer redshifts, interpolated to find the crossings. */
+/** Redshifts evenly spaced in ln(1 + z/0.1): the mass that the detector sees changes by as much from point to point. */
+function ownRedshifts(n: number): number[] {
+  const [from, to] = [Math.log1p(LEAST_Z / OWN_SCALE), Math.log1p(MOST_Z / OWN_SCALE)];
+  return Array.from({ length: n }, (_, i) => OWN_SCALE * Math.expm1(from + ((to - from) * i) / (n - 1)));
+}
+
+/** Silence, as a logarithm that a cubic can pass through. */
+const SILENT = -100;
+
+/** Route B: its own loudness at fewer redshifts, interpolated without the distance, which is known between them. */
 function interpolated({ scan }: RouteKit, request: PointRequest): Bracket[] {
-  const z = logSpaced(OWN_POINTS);
-  const values = z.map((at) => excess(scan, request, at)).map((v) => (Number.isFinite(v) ? v : -1e3));
-  const fine = logSpaced(8 * (OWN_POINTS - 1) + 1);
-  return bracketsIn(fine, fine.map((_, i) => (i % 8 === 0 ? values[i / 8]! : cubicAt(values, i / 8))));
+  const { cosmology, threshold } = detectorPoint(request);
+  const lnRho = ownRedshifts(OWN_POINTS).map((z) => Math.max(SILENT, Math.log(loudnessAt(scan, request, z)) || SILENT));
+  const fine = ownRedshifts(FINE * (OWN_POINTS - 1) + 1);
+  return bracketsIn(fine, fine.map((z, i) => cubicAt(lnRho, i / FINE) - Math.log(luminosityDistanceMpc(z, cosmology) * threshold)));
 }
 
 /** A bracket read off an interpolation is widened until the route itself changes sign there. */
