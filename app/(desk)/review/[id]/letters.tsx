@@ -1,6 +1,8 @@
 import { Prose } from '@/app/_ui/math/render-markdown';
 import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
 import { Table } from '@/app/_ui/primitives/table';
+import { VerdictChip } from '@/app/_ui/verdict/verdict-chip';
+import type { VerdictState } from '@/app/_ui/verdict/verdict-words';
 import { formatDay } from '@/app/views/dates';
 import { placeText } from '@/app/views/place-text';
 import { DECISION_WORDS } from '@/lib/reviews/decision';
@@ -38,9 +40,9 @@ export function LetterNumbers({ numbers }: { readonly numbers: readonly LetterNu
         {numbers.map((n, i) => (
           <tr key={i}>
             <th scope="row">{n.claim} {n.quantity}{placeText(n.at) && `, ${placeText(n.at)}`}</th>
-            <td>{n.claimed} {n.unit}</td>
-            <td>{formatWithUncertainty(n.recomputed, n.expandedUncertainty, n.unit)}</td>
-            <td>{n.verdict.replace('-', ' ')}</td>
+            <td className="whitespace-nowrap">{n.claimed} {n.unit}</td>
+            <td className="whitespace-nowrap">{formatWithUncertainty(n.recomputed, n.expandedUncertainty, n.unit)}</td>
+            <td><VerdictChip state={n.verdict as VerdictState} bare /></td>
           </tr>
         ))}
       </tbody>

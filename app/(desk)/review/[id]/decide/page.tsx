@@ -1,14 +1,16 @@
-import type { Metadata } from 'next';
+import type { Metadata, Route } from 'next';
+import Link from 'next/link';
 import { reportAsView } from '@/app/views/record-as-view';
 import { Prose } from '@/app/_ui/math/render-markdown';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
+import { Tag } from '@/app/_ui/primitives/tag';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { VerdictStrip } from '@/app/_ui/verdict/verdict-chip';
 import { loadFor } from '@/lib/http/page-guard';
 import type { Actor } from '@/lib/policy/actor';
 import { RULES_SENTENCE } from '@/lib/badges/cautions';
-import { THREAD_KIND_WORDS } from '@/lib/reviews/threads';
+import { THREAD_KIND_WORDS, THREAD_STATE_WORDS } from '@/lib/reviews/threads';
 import { draftDecision } from '@/lib/services/decisions/draft-decision';
 import type { DeskView } from '@/lib/services/reviews/desk-view';
 import { getDesk } from '@/lib/services/reviews/get-desk';
@@ -37,8 +39,14 @@ function OpenThreads({ desk }: { readonly desk: DeskView }) {
   return (
     <section aria-labelledby="open-h">
       <h2 id="open-h" className="mb-2">Open threads <span className="text-ink-2">{open.length}</span></h2>
-      <ul className="grid gap-2">
-        {open.map((t) => <li key={t.id} className="text-ui"><strong>{t.number}. {THREAD_KIND_WORDS[t.kind]}</strong> on {t.anchor.claim}: {t.comments[0]?.body.slice(0, 160)}</li>)}
+      {open.length === 0 && <p className="text-ui text-ink-2">None. Whatever was asked is settled.</p>}
+      <ul className="grid gap-3">
+        {open.map((t) => (
+          <li key={t.id} className="rounded border border-hair-2 bg-sheet px-4 py-3">
+            <p className="mb-1 flex flex-wrap items-center gap-2 text-ui"><strong>{t.number}. {THREAD_KIND_WORDS[t.kind]}</strong> on {t.anchor.claim} <Tag>{THREAD_STATE_WORDS[t.state]}</Tag></p>
+            <Prose source={t.comments[0]?.body ?? ''} />
+          </li>
+        ))}
       </ul>
     </section>
   );
@@ -50,7 +58,7 @@ export default async function Decide({ params }: { readonly params: Promise<{ re
   return (
     <div className="wrap grid gap-8 pt-10">
       <div>
-        <p className="text-ui text-ink-2">{desk.stateWords}, revision {desk.revision}</p>
+        <p className="flex flex-wrap items-center gap-x-3 text-ui text-ink-2">{desk.stateWords}, revision {desk.revision} <Link className="inline-flex min-h-8 items-center" href={`/review/${id}` as Route}>Read the claims and threads</Link></p>
         <h1>Decide on “{desk.title}”</h1>
         <div className="mt-2"><Strip lodged={lodged} /></div>
       </div>

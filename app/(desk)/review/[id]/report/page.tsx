@@ -1,4 +1,5 @@
-import type { Metadata } from 'next';
+import type { Metadata, Route } from 'next';
+import Link from 'next/link';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { loadFor } from '@/lib/http/page-guard';
@@ -13,7 +14,7 @@ export default async function Report({ params }: { readonly params: Promise<{ re
   return (
     <div className="wrap pt-10">
       <div className="mx-auto grid max-w-[820px] gap-6">
-        <p className="text-ui text-ink-2">{desk.you.name} · {desk.stateWords}, revision {desk.revision}</p>
+        <p className="flex flex-wrap items-center gap-x-3 text-ui text-ink-2">{desk.you.name} · {desk.stateWords}, revision {desk.revision} <Link className="inline-flex min-h-8 items-center" href={`/review/${id}` as Route}>Read the claims and threads</Link></p>
         <h1>Report on “{desk.title}”</h1>
         {desk.may.report ? (
           <ReportForm submissionId={id} />
