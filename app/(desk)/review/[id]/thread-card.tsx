@@ -56,7 +56,7 @@ function Comment({ comment, body }: { readonly comment: CommentView; readonly bo
       {variation && (
         <div className="mt-2 rounded border border-dashed border-control px-3 py-2 text-ui">
           <p className="font-semibold">Variation: {variation.changes.join(', ')}</p>
-          {variation.points.map((point, i) => <p key={i}>{variation.points.length > 1 && `${placeText(point.at)}: `}{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official {formatWithUncertainty(point.official, null, variation.unit).replace(' ± unknown', '')})</span>}</p>)}
+          {variation.points.map((point, i) => <p key={i}>{variation.points.length > 1 && `${placeText(point.at)}: `}{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official: {shown({ value: point.official })}{variation.unit && ` ${variation.unit}`})</span>}</p>)}
           <p className="text-small text-ink-2">A rerun with other settings. It changes no number of the record.</p>
         </div>
       )}
