@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { claimedFrom, claimedText, settingFrom } from '@/app/(desk)/compose/[id]/claim-fields';
+import { readingOf } from '@/app/(desk)/compose/[id]/claimed-reading';
 import { composerSchema } from '@/app/(desk)/compose/[id]/composer-schema';
 import { emptyNoise, emptyWaveform, fieldsFromSheet, sheetFromFields } from '@/app/(desk)/compose/[id]/fields';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
@@ -59,5 +60,21 @@ describe('a setting as typed', () => {
     expect(settingFrom('modes', '[[2,2],[2,-2]]')).toEqual([[2, 2], [2, -2]]);
     expect(settingFrom('fLowHz', 'twenty')).toBe('twenty');
     expect(settingFrom('fLowHz', '  ')).toBeUndefined();
+  });
+});
+
+describe('how a claimed value is read while it is typed', () => {
+  it.each([
+    ['0.9984(3)', false, '', '0.9984 ± 0.0003, last digit 10⁻⁴'],
+    ['1.2e3', false, '', '1200, last digit 10²'],
+    ['> 0.98', true, '60; 100', 'above 0.98'],
+    ['0.97; 0.98', true, '60; 100', '0.97, last digit 10⁻²; 0.98, last digit 10⁻²'],
+  ])('%s', (typed, sweep, over, words) => {
+    expect(readingOf(typed, sweep, over)).toBe(words);
+  });
+
+  it('says when values and places do not match, and when it is no number', () => {
+    expect(readingOf('0.97', true, '60; 100')).toMatch(/1 values? for 2 places/);
+    expect(readingOf('0,97', false, '')).toMatch(/^0,97: a number/);
   });
 });

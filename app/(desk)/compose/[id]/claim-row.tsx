@@ -1,124 +1,96 @@
 'use client';
+import type { ReactNode } from 'react';
 import { Button } from '@/app/_ui/primitives/button';
-import { SelectField, TextField } from '@/app/_ui/primitives/control';
-import { parseClaimed } from '@/lib/claims/claimed';
-import type { SettingRow } from '@/lib/engine/quantities/settings-table';
-import type { QuantityRow } from './quantity-row';
-import { claimedFrom } from './claim-fields';
+import { Input, Select, SelectField, TextField } from '@/app/_ui/primitives/control';
+import { VerdictChip } from '@/app/_ui/verdict/verdict-chip';
+import type { VerdictWord } from '@/lib/pipeline/result';
+import { readingOf } from './claimed-reading';
+import { ClaimSettings } from './claim-settings';
 import { errorAt } from './form-error';
+import type { QuantityRow } from './quantity-row';
 import type { ComposerForm } from './waveform-part';
 
-interface ClaimRowProps {
+export interface ClaimRowProps {
   readonly form: ComposerForm;
   readonly index: number;
   readonly catalogue: readonly QuantityRow[];
   readonly names: { readonly waveforms: readonly string[]; readonly noise: readonly string[] };
+  /** Of the latest check, by claim id. */
+  readonly verdicts: readonly { readonly id: string; readonly verdict: VerdictWord }[];
   readonly onRemove: () => void;
   readonly onDuplicate: () => void;
 }
 
-export function ClaimRow({ form, index, catalogue, names, onRemove, onDuplicate }: ClaimRowProps) {
+/** A claim: a row of cells, and beneath it what is declared for it. */
+export function ClaimRow(props: ClaimRowProps) {
+  const { form, index, catalogue, names, verdicts } = props;
   const { register, watch } = form;
   const at = `claims.${index}` as const;
   const claim = watch(at);
   const quantity = catalogue.find((q) => q.id === claim.quantity);
+  const verdict = verdicts.find((v) => v.id === claim.id)?.verdict;
+  const needsB = quantity?.roles.includes('b') ?? false;
+  const needsNoise = quantity?.needsNoise ?? true;
+  // What the new quantity has no place for would only be refused by the check.
+  const clearUnused = (chosen: string) => {
+    const next = catalogue.find((q) => q.id === chosen);
+    if (next && !next.roles.includes('b')) form.setValue(`${at}.b`, '', { shouldDirty: true });
+    if (next && !next.needsNoise) form.setValue(`${at}.noise`, '', { shouldDirty: true });
+  };
+  const id = claim.id || `claim ${index + 1}`;
+  const problem = [errorAt(form, `${at}.id`), errorAt(form, `${at}.tolerance`)].filter(Boolean).join(' ');
+  const notes = `claim-${index}-notes`;
   return (
-    <fieldset id={`claim-${claim.id}`} className="grid gap-3 rounded border border-hair-2 bg-sheet px-4 py-3">
-      <legend className="px-1 text-small font-semibold">Claim {claim.id}</legend>
-      <div className="grid gap-3 sm:grid-cols-[90px_minmax(0,2fr)_minmax(0,1fr)_minmax(0,1fr)_minmax(0,1fr)]">
-        <TextField label="Id" error={errorAt(form, `${at}.id`)} {...register(`${at}.id`)} />
-        <SelectField label="Quantity" {...register(`${at}.quantity`)}>
-          {!quantity && <option value={claim.quantity}>{claim.quantity || 'choose one'}</option>}
-          {catalogue.map((q) => <option key={q.id} value={q.id}>{q.title}</option>)}
-        </SelectField>
-        {(quantity?.roles ?? ['a']).map((role) => (
-          <SelectField key={role} label={role === 'a' ? 'Of waveform a' : 'against b'} {...register(`${at}.${role}`)}><option value="">choose</option>{names.waveforms.map((n) => <option key={n}>{n}</option>)}</SelectField>
-        ))}
-        {quantity?.needsNoise !== false && <SelectField label="Noise" {...register(`${at}.noise`)}><option value="">choose</option>{names.noise.map((n) => <option key={n}>{n}</option>)}</SelectField>}
-      </div>
-      {quantity && <Settings form={form} index={index} quantity={quantity} />}
-      <Values form={form} index={index} quantity={quantity} />
-      <div className="flex flex-wrap gap-2">
-        <Button size="low" tone="quiet" onClick={onDuplicate}>Duplicate</Button>
-        <Button size="low" tone="quiet" onClick={onRemove}>Remove this claim</Button>
-      </div>
-    </fieldset>
+    <tbody>
+      <tr>
+        <th scope="row"><Input dense aria-label={`Id of ${id}`} aria-invalid={errorAt(form, `${at}.id`) ? true : undefined} aria-describedby={notes} {...register(`${at}.id`)} /></th>
+        <td>
+          <Select dense aria-label={`Quantity of ${id}`} {...register(`${at}.quantity`, { onChange: (e: { target: { value: string } }) => clearUnused(e.target.value) })}>
+            {!quantity && <option value={claim.quantity}>{claim.quantity || 'choose one'}</option>}
+            {catalogue.map((q) => <option key={q.id} value={q.id}>{q.title}</option>)}
+          </Select>
+        </td>
+        <Choice when label={`Waveform a of ${id}`} options={names.waveforms}>{(shared) => <Select {...shared} {...register(`${at}.a`)} />}</Choice>
+        <Choice when={needsB || claim.b !== ''} label={`Waveform b of ${id}`} options={names.waveforms}>{(shared) => <Select {...shared} {...register(`${at}.b`)} />}</Choice>
+        <Choice when={needsNoise || claim.noise !== ''} label={`Noise of ${id}`} options={names.noise}>{(shared) => <Select {...shared} {...register(`${at}.noise`)} />}</Choice>
+        <td><Input dense aria-label={`Claimed value of ${id}${quantity?.unit ? `, ${quantity.unit}` : ''}`} aria-describedby={notes} spellCheck={false} autoComplete="off" {...register(`${at}.claimed`)} /></td>
+        <td><Input dense aria-label={`Tolerance of ${id}, ${quantity?.scale === 'ln' ? 'a fraction' : 'in the unit of the number'}`} placeholder="natural" aria-invalid={errorAt(form, `${at}.tolerance`) ? true : undefined} aria-describedby={notes} inputMode="decimal" {...register(`${at}.tolerance`)} /></td>
+        <td className="whitespace-nowrap text-ink-2">{quantity?.scale === 'ln' && quantity.unit === '' ? 'T: fraction' : quantity?.unit || '1'}</td>
+        <td className="whitespace-nowrap">{verdict ? <VerdictChip state={verdict} bare /> : <span className="text-ink-2">not yet</span>}</td>
+      </tr>
+      <tr><td colSpan={9} className="pb-4"><Beneath {...props} quantity={quantity} problem={problem} notes={notes} /></td></tr>
+    </tbody>
   );
 }
 
-/** The settings most claims name come first; the rest is a choice away. */
-const often = ['totalMassMsun', 'distanceMpc', 'fLowHz', 'fHighHz', 'startM', 'normaliseBy', 'includeEnergyBeforeStart', 'parameters'];
+interface ChoiceProps {
+  readonly when: boolean;
+  readonly label: string;
+  readonly options: readonly string[];
+  readonly children: (shared: { readonly dense: true; readonly 'aria-label': string; readonly children: ReactNode }) => ReactNode;
+}
 
-function Settings({ form, index, quantity }: { readonly form: ComposerForm; readonly index: number; readonly quantity: QuantityRow }) {
+function Choice({ when, label, options, children }: ChoiceProps) {
+  if (!when) return <td className="text-ink-2">none</td>;
+  return <td>{children({ dense: true, 'aria-label': label, children: <><option value="">choose</option>{options.map((n, i) => <option key={`${n}${i}`}>{n}</option>)}</> })}</td>;
+}
+
+function Beneath({ form, index, quantity, problem, notes, onDuplicate, onRemove }: ClaimRowProps & { readonly quantity: QuantityRow | undefined; readonly problem: string; readonly notes: string }) {
   const at = `claims.${index}` as const;
-  const { settings, overSetting } = form.watch(at);
-  const shown = quantity.settings.filter((s) => s.name !== overSetting && (often.includes(s.name) || settings[s.name] !== undefined));
-  const others = quantity.settings.filter((s) => s.name !== overSetting && !shown.includes(s));
-  const stray = Object.keys(settings).filter((name) => (settings[name] ?? '') !== '' && !quantity.settings.some((s) => s.name === name));
-  return (
-    <div className="grid gap-3 sm:grid-cols-3 mid:grid-cols-4">
-      {shown.map((s) => <SettingField key={s.name} form={form} index={index} row={s} />)}
-      {stray.map((name) => <TextField key={name} label={`${name}: no setting of this quantity`} error="Empty this box, or choose another quantity." {...form.register(`${at}.settings.${name}`)} />)}
-      {others.length > 0 && (
-        <SelectField label="Declare another setting" value="" onChange={(e) => form.setValue(`${at}.settings.${e.target.value}`, '', { shouldDirty: true })}>
-          <option value="">choose one</option>
-          {others.map((s) => <option key={s.name} value={s.name}>{s.name}</option>)}
-        </SelectField>
-      )}
-    </div>
-  );
-}
-
-function rangeOf({ shape, unit }: SettingRow): string {
-  if (shape.kind === 'number' && shape.min !== undefined) return `${shape.min} to ${shape.max} ${unit}`.trim();
-  if (shape.kind === 'number' && shape.above !== undefined) return `above ${shape.above} ${unit}`.trim();
-  if (shape.kind === 'integer') return `whole number, ${shape.min} to ${shape.max}`;
-  if (shape.kind === 'modes') return 'for example [[2,2],[2,-2]]';
-  if (shape.kind === 'cosmology') return 'for example {"h0":67.4,"omegaM":0.315}';
-  if (shape.kind === 'interval') return `[from, to] ${unit}`.trim();
-  if (shape.kind === 'subset') return shape.options.join(', ');
-  return '';
-}
-
-function SettingField({ form, index, row }: { readonly form: ComposerForm; readonly index: number; readonly row: SettingRow }) {
-  const field = form.register(`claims.${index}.settings.${row.name}`);
-  const label = <><span className="font-semibold">{row.name}</span>{row.unit && <span className="font-normal text-ink-2">, {row.unit}</span>}</>;
-  const assumed = `assumed: ${row.houseDefault}`;
-  if (row.shape.kind === 'choice')
-    return <SelectField label={label} hint={row.meaning} {...field}><option value="">{assumed}</option>{row.shape.options.map((o) => <option key={String(o)}>{String(o)}</option>)}</SelectField>;
-  return <TextField label={label} placeholder={assumed} hint={[row.meaning, rangeOf(row)].filter(Boolean).join(' ')} spellCheck={false} {...field} />;
-}
-
-function Values({ form, index, quantity }: { readonly form: ComposerForm; readonly index: number; readonly quantity: QuantityRow | undefined }) {
-  const { register, watch } = form;
-  const at = `claims.${index}` as const;
-  const { claimed, overSetting, overValues } = watch(at);
+  const { id, claimed, overSetting, overValues } = form.watch(at);
   const sweep = overSetting !== '';
   return (
-    <div className="grid gap-3 sm:grid-cols-4">
-      <SelectField label="Over" {...register(`${at}.overSetting`)}><option value="">one number</option>{(quantity?.sweepable ?? []).map((s) => <option key={s}>{s}</option>)}</SelectField>
-      {sweep && <TextField label={`Values of ${overSetting}`} hint="with ; between" {...register(`${at}.overValues`)} />}
-      <TextField label={`Claimed${quantity?.unit ? `, ${quantity.unit}` : ''}`} hint={readingOf(claimed, sweep, overValues)} spellCheck={false} {...register(`${at}.claimed`)} />
-      <TextField label="Tolerance" placeholder="natural" error={errorAt(form, `${at}.tolerance`)} hint={quantity?.scale === 'ln' ? 'a fraction: 0.05 is 5 %' : 'in the unit of the number'} inputMode="decimal" {...register(`${at}.tolerance`)} />
+    <div className="grid gap-3 border-l-2 border-hair-2 pl-4">
+      <p id={notes} className="text-small text-ink-2">{problem && <span className="text-differs">{problem} </span>}Claimed: {readingOf(claimed, sweep, overValues)}</p>
+      {quantity && <ClaimSettings form={form} index={index} quantity={quantity} />}
+      <div className="grid items-start gap-3 sm:grid-cols-3 mid:grid-cols-4">
+        <SelectField label="Over" {...form.register(`${at}.overSetting`)}><option value="">one number</option>{(quantity?.sweepable ?? []).map((s) => <option key={s}>{s}</option>)}</SelectField>
+        {sweep && <TextField label={`Values of ${overSetting}`} hint="with ; between; as many claimed values, with ; between" {...form.register(`${at}.overValues`)} />}
+        <div className="flex flex-wrap gap-2 self-end">
+          <Button size="low" tone="quiet" aria-label={`Duplicate ${id}`} onClick={onDuplicate}>Duplicate</Button>
+          <Button size="low" tone="quiet" aria-label={`Remove ${id}`} onClick={onRemove}>Remove</Button>
+        </div>
+      </div>
     </div>
   );
-}
-
-/** How the server will read what is typed, while it is typed. */
-export function readingOf(typed: string, sweep: boolean, overValues: string): string {
-  const parts = sweep ? typed.split(';').map((p) => p.trim()).filter(Boolean) : [typed];
-  if (typed.trim() === '') return 'as printed, for example 0.9984(3); > 0.99 for a bound; = 0.9984 for an exact number';
-  const wanted = overValues.split(';').filter((v) => v.trim()).length;
-  const oneBound = parts.length === 1 && /^[<>]/.test(typed.trim());
-  if (sweep && parts.length !== wanted && !oneBound) return `${parts.length} values for ${wanted} places: give one for each, with ; between`;
-  return parts.map((part) => oneReading(part)).join('; ');
-}
-
-function oneReading(part: string): string {
-  const read = parseClaimed(claimedFrom(part));
-  if (!read.ok) return `${part}: ${read.error.expected}`;
-  const c = read.value;
-  if (c.kind !== 'value') return `${c.kind} ${c.bound}`;
-  const digits = c.digits === null ? 'exact' : `last digit 10^${-c.digits}`.replace('^-', '⁻');
-  return `${c.value}${c.uncertainty === null ? '' : ` ± ${c.uncertainty}`}, ${digits}`;
 }

@@ -94,7 +94,7 @@ export function Composer(props: ComposerProps) {
           <Part id="files" title="Files"><FilesPart id={id} files={files} usedBy={(name) => usersOf(form, name)} version={() => saving.version.current} settle={saving.saveNow} /></Part>
           <Part id="waveforms" title="Waveforms"><WaveformsPart form={form} files={names} /></Part>
           <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} /></Part>
-          <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} /></Part>
+          <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} verdicts={props.check?.current ? props.check.verdicts : []} /></Part>
           <Part id="statement" title="Statement"><StatementPart form={form} /></Part>
           <Part id="people" title="People"><PeoplePart id={id} authors={props.authors} you={props.you} /></Part>
         </div>

@@ -8,7 +8,6 @@ import { reportAsView } from '@/app/views/record-as-view';
 import { submissionAsView } from '@/app/views/submission-as-view';
 import { loadFor } from '@/lib/http/page-guard';
 import { isSignedIn, type Actor } from '@/lib/policy/actor';
-import { isEditableState } from '@/lib/policy/submission-state';
 import { NOT_FOUND } from '@/lib/services/app-error';
 import { getDesk } from '@/lib/services/reviews/get-desk';
 import { getDraft } from '@/lib/services/submissions/get-draft';
@@ -41,12 +40,12 @@ async function loadAll(actor: Actor, id: string, wanted: number | undefined) {
   if (!desk.ok) return desk;
   if (desk.value.you.role !== 'author' && desk.value.you.role !== 'co-author') return { ok: false as const, error: NOT_FOUND };
   const variations = lodged.value.may.vary && isSignedIn(actor) ? await listVariations(actor, id) : null;
-  return { ok: true as const, value: { draft: draft.value, lodged: lodged.value, desk: desk.value, variations: variations?.ok ? variations.value : null } };
+  return { ok: true as const, value: { you: isSignedIn(actor) ? actor.userId : '', draft: draft.value, lodged: lodged.value, desk: desk.value, variations: variations?.ok ? variations.value : null } };
 }
 
 type Loaded = NonNullable<Extract<Awaited<ReturnType<typeof loadAll>>, { ok: true }>['value']>;
 
-function slotsFor({ draft, lodged, desk, variations }: Loaded): RecordSlots {
+function slotsFor({ you, draft, lodged, desk, variations }: Loaded): RecordSlots {
   const result = lodged.run?.state === 'measured' ? lodged.run.result : null;
   const pointsOf = (claimId: string) => result?.claims.find((c) => c.id === claimId)?.points ?? [];
   const curves = Object.keys(lodged.revision.sheet.noise);
@@ -56,7 +55,7 @@ function slotsFor({ draft, lodged, desk, variations }: Loaded): RecordSlots {
     action: (claimId) => (variations && result ? <VariationPanel submissionId={lodged.id} claimId={claimId} curves={curves} unit={result.claims.find((c) => c.id === claimId)?.unit ?? ''} own={variations.variations.filter((v) => v.claimId === claimId)} left={variations.left} points={pointsOf(claimId)} /> : null),
     discussion: (claimId) => <ClaimDiscussion desk={desk} claimId={claimId} points={pointsOf(claimId)} variations={variations?.variations.filter((v) => v.claimId === claimId) ?? []} />,
     actions: <Actions draft={draft} />,
-    aside: <NextStep draft={draft} lodged={lodged} desk={desk} variations={variations} />,
+    aside: <NextStep you={you} draft={draft} desk={desk} />,
   };
 }
 
@@ -73,9 +72,9 @@ function Actions({ draft }: { readonly draft: Loaded['draft'] }) {
 }
 
 /** What the authors may expect or do now, in a sentence. */
-function NextStep({ draft, desk }: Loaded) {
+function NextStep({ you, draft, desk }: Pick<Loaded, 'you' | 'draft' | 'desk'>) {
   const open = desk.threads.filter((t) => t.state === 'open').length;
-  const waiting = draft.authors.filter((a) => !a.confirmed);
+  const unconfirmed = draft.authors.some((a) => a.userId === you && !a.confirmed);
   const words: Partial<Record<Loaded['lodged']['state'], string>> = {
     lodged: 'The official run is under way. An editor sees the submission when it has ended.',
     triage: 'An editor takes it up next.',
@@ -85,13 +84,13 @@ function NextStep({ draft, desk }: Loaded) {
     'on-hold': 'The editor has put it on hold.',
   };
   const sentence = words[desk.state];
-  if (!sentence && open === 0) return null;
+  if (!sentence && open === 0 && !unconfirmed) return null;
   return (
     <Card title="Next step">
       <div className="grid gap-2 text-ui">
         {sentence && <p>{sentence}</p>}
         {open > 0 && <p>{open} {open === 1 ? 'thread is' : 'threads are'} open; the claims they hang on stand open above.</p>}
-        {waiting.length > 0 && isEditableState(desk.state) && <ActButton act={confirmAuthorship} input={{ id: draft.id }} busy="Confirming">Confirm my authorship</ActButton>}
+        {unconfirmed && <ActButton act={confirmAuthorship} input={{ id: draft.id }} busy="Confirming">Confirm my authorship</ActButton>}
       </div>
     </Card>
   );
