@@ -39,6 +39,16 @@ export function powersOf(s: Spectrum): Powers {
   return made;
 }
 
+/** Of a waveform's whole power, a run of bins that holds less sees the transform's last digits only: finer bins or steps would chase them. */
+const LAST_DIGITS = 1e-26;
+
+export function holdsRoundingOnly(s: Spectrum, fromBin: number, toBin: number): boolean {
+  const { at, tails } = powersOf(s);
+  let inside = 0;
+  for (let k = Math.max(s.firstBin, Math.ceil(fromBin)); k <= Math.min(at.length - 1, toBin); k++) inside += at[k]!;
+  return inside < LAST_DIGITS * tails[0]!;
+}
+
 /** The last bin above which no weight of the curve could make the power visible beside `all`. */
 export function lastLiveBin(s: Spectrum, all: number, ceiling: number): number {
   const { tails } = powersOf(s);

@@ -1,6 +1,6 @@
 import type { Band, Side } from '@/lib/engine/contract/route';
 import { powerOfTwoFrom } from '@/lib/engine/fourier/transform';
-import { lastLiveBin, powersOf, survey, type Survey } from './band-power';
+import { holdsRoundingOnly, lastLiveBin, powersOf, survey, type Survey } from './band-power';
 import { binWeights, glanceAtEdges, type BinRange, type BinWeights } from './bin-weights';
 import type { Numerics } from './numerics';
 import { MOST_SAMPLES } from './sample-grid';
@@ -272,13 +272,22 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
     const spectra = spectraOn(request, plan, store, numerics, contents);
     const mayPad = numerics.refineBins && plan.doublings < plan.mostDoublings;
     const { loose, liveLast } = outlook(request, plan.dF, spectra, store, numerics);
-    if (mayPad && loose) {
+    const empty = (): boolean =>
+      spectra.every((s, i) =>
+        holdsRoundingOnly(
+          s,
+          (request.band.fLowHz * request.sides[i]!.secondsPerUnit) / s.dF,
+          (request.band.fHighHz * request.sides[i]!.secondsPerUnit) / s.dF,
+        ),
+      );
+    if (mayPad && loose && !empty()) {
       extra = padded(request, plan, store);
       continue;
     }
     const found = onBins(request, plan, spectra, liveLast, store, numerics);
     const surveys = found.spectra.map((s) => survey(s, found.weights));
-    const full = numerics.refineStep ? fullSide(request, found, surveys, store, numerics) : undefined;
+    const side = numerics.refineStep ? fullSide(request, found, surveys, store, numerics) : undefined;
+    const full = side !== undefined && !empty() ? side : undefined;
     if (full !== undefined) store.halve(full.waveform);
     else if (mayPad && spectra.some((s, i) => fileIsLoose(s, request.sides[i]!, request.band, found.weights, store, numerics)))
       extra = padded(request, plan, store);
