@@ -13,7 +13,7 @@ const everyone: readonly NavEntry[] = [
   { href: '/methods', label: 'Methods' },
 ];
 const members: readonly NavEntry[] = [
-  { href: '/compose', label: 'Lodge' },
+  { href: '/submissions', label: 'Submissions' },
   { href: '/desk', label: 'Desk' },
 ];
 
