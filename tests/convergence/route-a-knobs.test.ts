@@ -31,11 +31,29 @@ describe('local interpolation', () => {
 
 describe('end weights between bins', () => {
   // ∫ f^(−7/3)/f^(−4) df from 31.7 to 97.3 Hz in closed form: both edges and the law of the noise lie between bins.
-  const noise: NoiseCurve = { name: 'f⁻⁴', builtIn: null, fLowHz: 1, fHighHz: 4000, psd: (f) => f ** -4, points: null, alreadyAveraged: false, source: 'closed form' };
+  const noise: NoiseCurve = {
+    name: 'f⁻⁴',
+    builtIn: null,
+    fLowHz: 1,
+    fHighHz: 4000,
+    psd: (f) => f ** -4,
+    points: null,
+    alreadyAveraged: false,
+    source: 'closed form',
+  };
   const [low, high] = [31.7, 97.3];
   const exact = (high ** (8 / 3) - low ** (8 / 3)) / (8 / 3);
   const error = (dfHz: number, order: number): number => {
-    const { first, values } = binWeights(noiseWeigher(noise, 0), { dfHz, fLowHz: low, fHighHz: high, firstBin: 1, lastBin: 4000, curveLowHz: 1, curveHighHz: 4000, order });
+    const { first, values } = binWeights(noiseWeigher(noise, 0), {
+      dfHz,
+      fLowHz: low,
+      fHighHz: high,
+      firstBin: 1,
+      lastBin: 4000,
+      curveLowHz: 1,
+      curveHighHz: 4000,
+      order,
+    });
     const sum = values.reduce((total, v, i) => total + v * ((first + i) * dfHz) ** (-7 / 3), 0);
     return Math.abs((dfHz * sum) / exact - 1);
   };
@@ -46,7 +64,9 @@ describe('end weights between bins', () => {
 
   it('leave 1e-12 where a hard mask leaves 1e-3', () => {
     expect(error(0.5, 8)).toBeLessThan(1e-12);
-    const mask = Array.from({ length: 400 }, (_, k) => k * 0.5).filter((f) => f >= low && f <= high).reduce((sum, f) => sum + 0.5 * f ** (5 / 3), 0);
+    const mask = Array.from({ length: 400 }, (_, k) => k * 0.5)
+      .filter((f) => f >= low && f <= high)
+      .reduce((sum, f) => sum + 0.5 * f ** (5 / 3), 0);
     expect(Math.abs(mask / exact - 1)).toBeGreaterThan(1e-3);
   });
 });
@@ -66,7 +86,16 @@ describe('weights of a tabulated curve', () => {
     return sum + (to ** p - from ** p) / (p * c);
   }, 0);
   const error = (dfHz: number): number => {
-    const { first, values: w } = binWeights(noiseWeigher(noise!, 0), { dfHz, fLowHz: 10, fHighHz: 200, firstBin: 1, lastBin: 1e5, curveLowHz: 10, curveHighHz: 200, order: 8 });
+    const { first, values: w } = binWeights(noiseWeigher(noise!, 0), {
+      dfHz,
+      fLowHz: 10,
+      fHighHz: 200,
+      firstBin: 1,
+      lastBin: 1e5,
+      curveLowHz: 10,
+      curveHighHz: 200,
+      order: 8,
+    });
     const sum = w.reduce((total, v, i) => total + v * ((first + i) * dfHz) ** -1.5, 0);
     return Math.abs((dfHz * sum) / exact - 1);
   };
@@ -99,18 +128,34 @@ describe('route A against itself', () => {
     const set = fine.content.kind === 'modes' ? fine.content.modes : [];
     const inside = axis.filter((t) => t <= fine.axis[fine.axis.length - 1]!);
     const modes = set.map((mode) => {
-      const read = (values: Float64Array) => inside.map((t) => interpolatePair({ axis: fine.axis, first: values, second: values }, { t0: t, dt: 1, n: 1 }, 10)[0][0]!);
+      const read = (values: Float64Array) =>
+        inside.map((t) => interpolatePair({ axis: fine.axis, first: values, second: values }, { t0: t, dt: 1, n: 1 }, 10)[0][0]!);
       return { ...mode, re: read(mode.re), im: read(mode.im) };
     });
     return { ...of, axis: inside, uniformStep: null, content: { kind: 'modes', modes } };
   };
-  const side = (waveform: typeof w): Side => ({ waveform, taper: { start: null, end: null }, secondsPerUnit: 140 * MSUN_S, strainPerUnit: 1e-21, inclinationRad: 0.6, azimuthRad: 0.2 });
+  const side = (waveform: typeof w): Side => ({
+    waveform,
+    taper: { start: null, end: null },
+    secondsPerUnit: 140 * MSUN_S,
+    strainPerUnit: 1e-21,
+    inclinationRad: 0.6,
+    azimuthRad: 0.2,
+  });
   const band: Band = { noise: curve('G2'), fLowHz: 25.3, fHighHz: 611.7 };
   const taper = { start: { from: 0, to: 300 }, end: null };
   const [a, b] = [w, other].map((x) => ({ ...side(uneven(x)), taper }));
   const store = new SpectrumStore();
   const mismatch = (change: Partial<Numerics>): number =>
-    createRouteA({ ...houseNumerics, ...change }, store).match({ a: a!, b: b!, band, response: 'plus', maximise: ['time', 'phase'], templateMassRange: [1, 1], rescale: (s) => s }).mismatch;
+    createRouteA({ ...houseNumerics, ...change }, store).match({
+      a: a!,
+      b: b!,
+      band,
+      response: 'plus',
+      maximise: ['time', 'phase'],
+      templateMassRange: [1, 1],
+      rescale: (s) => s,
+    }).mismatch;
   const base = mismatch({});
 
   it.each([

@@ -21,7 +21,12 @@ function record(name: string, { fHz, widthS, atS, phaseRad, chirp, size }: Burst
     const s = t - atS;
     return size * Math.exp(-((s / widthS) ** 2) / 2) * Math.cos(2 * Math.PI * (fHz * s + chirp * s * s) + phaseRad - quarter);
   };
-  const waveform = columns(name, axis, axis.map((t) => strain(t, 0)), axis.map((t) => strain(t, Math.PI / 2)));
+  const waveform = columns(
+    name,
+    axis,
+    axis.map((t) => strain(t, 0)),
+    axis.map((t) => strain(t, Math.PI / 2)),
+  );
   return { waveform, taper: { start: null, end: null }, secondsPerUnit: 1, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
 }
 
@@ -45,15 +50,21 @@ const few = { numRuns: 12, seed: 20 };
 describe('a match', () => {
   it('does not change when b is moved by any part of a sample or turned by any phase (T10), and tells the move', () => {
     fc.assert(
-      fc.property(burst(), burst(), fc.double({ min: -0.2, max: 0.2, noNaN: true }), fc.double({ min: -3, max: 3, noNaN: true }), (p, q, byS, byRad) => {
-        const [a, b] = [record('A', p), record('B', q)];
-        const moved = record('B', { ...q, atS: byS, phaseRad: q.phaseRad + byRad });
-        expect(match(a, moved)).toAgreeWith(match(a, b), 1e-10);
-        const copy = outcome(record('A', q), moved);
-        expect(copy.match).toAgreeWith(1, 1e-12);
-        expect(copy.timeShiftS).toAgreeWith(-byS, 1e-9);
-        expect(Math.cos(copy.phaseShiftRad + byRad)).toAgreeWith(1, 1e-9);
-      }),
+      fc.property(
+        burst(),
+        burst(),
+        fc.double({ min: -0.2, max: 0.2, noNaN: true }),
+        fc.double({ min: -3, max: 3, noNaN: true }),
+        (p, q, byS, byRad) => {
+          const [a, b] = [record('A', p), record('B', q)];
+          const moved = record('B', { ...q, atS: byS, phaseRad: q.phaseRad + byRad });
+          expect(match(a, moved)).toAgreeWith(match(a, b), 1e-10);
+          const copy = outcome(record('A', q), moved);
+          expect(copy.match).toAgreeWith(1, 1e-12);
+          expect(copy.timeShiftS).toAgreeWith(-byS, 1e-9);
+          expect(Math.cos(copy.phaseShiftRad + byRad)).toAgreeWith(1, 1e-9);
+        },
+      ),
       few,
     );
   });
@@ -109,14 +120,22 @@ describe('a match', () => {
 describe('a loudness', () => {
   it('grows with the strain, whatever its time and phase, and adds up over bands (T12)', () => {
     fc.assert(
-      fc.property(burst(fc.double({ min: -0.2, max: 0.2, noNaN: true })), fc.double({ min: 0.1, max: 10, noNaN: true }), fc.double({ min: 50, max: 900, noNaN: true }), (p, factor, cut) => {
-        const rho = (side: Side, more: Partial<Band> = {}) => Math.sqrt(route.gram(side, { ...band, ...more }).plusPlus);
-        const a = record('A', p);
-        const whole = rho(a);
-        expect(rho(record('A', { ...p, size: p.size * factor, atS: p.atS + 0.01234, phaseRad: p.phaseRad }))).toAgreeWith(whole * factor, { relative: 1e-9 });
-        const parts = Math.hypot(rho(a, { fHighHz: cut }), rho(a, { fLowHz: cut }));
-        expect(parts).toAgreeWith(whole, { relative: 1e-9 });
-      }),
+      fc.property(
+        burst(fc.double({ min: -0.2, max: 0.2, noNaN: true })),
+        fc.double({ min: 0.1, max: 10, noNaN: true }),
+        fc.double({ min: 50, max: 900, noNaN: true }),
+        (p, factor, cut) => {
+          const rho = (side: Side, more: Partial<Band> = {}) => Math.sqrt(route.gram(side, { ...band, ...more }).plusPlus);
+          const a = record('A', p);
+          const whole = rho(a);
+          expect(rho(record('A', { ...p, size: p.size * factor, atS: p.atS + 0.01234, phaseRad: p.phaseRad }))).toAgreeWith(
+            whole * factor,
+            { relative: 1e-9 },
+          );
+          const parts = Math.hypot(rho(a, { fHighHz: cut }), rho(a, { fLowHz: cut }));
+          expect(parts).toAgreeWith(whole, { relative: 1e-9 });
+        },
+      ),
       few,
     );
   });

@@ -30,7 +30,13 @@ export function binary(name: string, more: Partial<SynthesisRequest> = {}): Wave
 }
 
 /** Physical strain along one line of sight, in seconds. */
-export const columns = (name: string, axis: Float64Array, plus: Float64Array, cross: Float64Array | null, more: Partial<Waveform> = {}): Waveform => ({
+export const columns = (
+  name: string,
+  axis: Float64Array,
+  plus: Float64Array,
+  cross: Float64Array | null,
+  more: Partial<Waveform> = {},
+): Waveform => ({
   name,
   domain: 'time',
   unit: 's',

@@ -6,7 +6,11 @@
  * Fails:  never; a value or claim that is null is passed over.
  * Source: our definition of the worst point (settings: which points route B takes).
  */
-export function worstIndex(values: readonly (number | null)[], claimed: readonly (number | null)[], tolerance: (claimed: number) => number): number {
+export function worstIndex(
+  values: readonly (number | null)[],
+  claimed: readonly (number | null)[],
+  tolerance: (claimed: number) => number,
+): number {
   let worst = 0;
   let furthest = -1;
   values.forEach((value, i) => {
@@ -26,10 +30,12 @@ const spread = (n: number, always: readonly number[], others: number): number[] 
 };
 
 /** Where route B runs: every point up to ten; of more, both ends, the worst and eight spread between. */
-export const routeBIndices = (n: number, worst: number): number[] => (n <= 10 ? Array.from({ length: n }, (_, i) => i) : spread(n, [0, worst, n - 1], 8));
+export const routeBIndices = (n: number, worst: number): number[] =>
+  n <= 10 ? Array.from({ length: n }, (_, i) => i) : spread(n, [0, worst, n - 1], 8);
 
 /** Where the error bar is measured: every point up to five; of more, both ends, the worst and two between. */
-export const errorBarIndices = (n: number, worst: number): number[] => (n <= 5 ? Array.from({ length: n }, (_, i) => i) : spread(n, [0, worst, n - 1], 2));
+export const errorBarIndices = (n: number, worst: number): number[] =>
+  n <= 5 ? Array.from({ length: n }, (_, i) => i) : spread(n, [0, worst, n - 1], 2);
 
 /** The larger of the two measured neighbours. */
 export function fromNeighbours(n: number, measured: ReadonlyMap<number, number>): number[] {

@@ -30,9 +30,12 @@ function movedBy(context: BudgetContext, change: Partial<PointRequest>): number 
   return recipe.again(kit, { ...request, ...change }, found) - found.value;
 }
 
-const withSettings = ({ request }: BudgetContext, settings: DeclaredSettings): Partial<PointRequest> => ({ declared: { ...request.declared, ...settings } });
+const withSettings = ({ request }: BudgetContext, settings: DeclaredSettings): Partial<PointRequest> => ({
+  declared: { ...request.declared, ...settings },
+});
 
-const largest = (moves: readonly number[]): number | null => (moves.length === 0 || moves.some((x) => !Number.isFinite(x)) ? null : Math.max(...moves.map(Math.abs)));
+const largest = (moves: readonly number[]): number | null =>
+  moves.length === 0 || moves.some((x) => !Number.isFinite(x)) ? null : Math.max(...moves.map(Math.abs));
 
 function computationLines({ error, request }: BudgetContext): BudgetLine[] {
   const digits = waveformsOf(request).map((c) => c.given.significantDigits);
@@ -45,13 +48,21 @@ function computationLines({ error, request }: BudgetContext): BudgetLine[] {
       u: standardOf(error.quadrature),
       note: `Six knobs of route A turned one by one, their changes added (largest: ${error.largestKnob}); half-width over √3.`,
     },
-    { component: 'Derivative and integration stencil', id: 'E02', group: 'computation', u: 0, note: 'Not used: no derivative is taken; news and ψ₄ are divided by powers of 2πif.' },
+    {
+      component: 'Derivative and integration stencil',
+      id: 'E02',
+      group: 'computation',
+      u: 0,
+      note: 'Not used: no derivative is taken; news and ψ₄ are divided by powers of 2πif.',
+    },
     {
       component: 'Rounding of the input',
       id: 'rounding',
       group: 'computation',
       u: standardOf(error.rounding),
-      note: isPrinted(request) ? `A tenth of the change when the samples (${printed}) are printed with one digit less; half-width over √3.` : `The samples carry the digits of a double (${printed}).`,
+      note: isPrinted(request)
+        ? `A tenth of the change when the samples (${printed}) are printed with one digit less; half-width over √3.`
+        : `The samples carry the digits of a double (${printed}).`,
     },
     { component: 'Monte Carlo averages', id: 'E17', group: 'computation', u: 0, note: 'Not used: nothing is drawn at random.' },
   ];
@@ -107,15 +118,29 @@ function noiseLine(context: BudgetContext): BudgetLine {
   const coarse = kitOf({ ...houseNumerics, refineStep: false, kinkChange: COARSE_KINKS }, context.store);
   const before = context.recipe.again(coarse, context.request, context.found);
   const others = [linearBetween(noise, noise.points), everySecondPoint(noise, noise.points)].filter((curve) => curve !== null);
-  const moves = others.map((curve) => context.recipe.again(coarse, { ...context.request, noise: { ...curve, alreadyAveraged: noise.alreadyAveraged } }, context.found) - before);
+  const moves = others.map(
+    (curve) =>
+      context.recipe.again(coarse, { ...context.request, noise: { ...curve, alreadyAveraged: noise.alreadyAveraged } }, context.found) -
+      before,
+  );
   const moved = largest(moves);
-  return { ...base, u: moved === null ? null : standardOf(moved), note: `S linear in f between points, and every second of ${noise.points.length} points left out: ${moves.map((x) => short(x, 2)).join(', ')}; half-width over √3.` };
+  return {
+    ...base,
+    u: moved === null ? null : standardOf(moved),
+    note: `S linear in f between points, and every second of ${noise.points.length} points left out: ${moves.map((x) => short(x, 2)).join(', ')}; half-width over √3.`,
+  };
 }
 
 const unknownLines = (): BudgetLine[] => [
   { component: 'Simulation truncation error', id: 'E05', group: 'coverage', u: null, note: 'Not available: one resolution.' },
   { component: 'Extraction radius', id: 'E06', group: 'coverage', u: null, note: 'Not available: one radius.' },
-  { component: 'Start-up radiation', id: 'E07', group: 'coverage', u: null, note: 'Not available: one record does not tell a start-up burst from signal in the band.' },
+  {
+    component: 'Start-up radiation',
+    id: 'E07',
+    group: 'coverage',
+    u: null,
+    note: 'Not available: one record does not tell a start-up burst from signal in the band.',
+  },
 ];
 
 /** E09: the ℓ above the highest given, as the tail of a geometric series in what each ℓ adds to the value. */
@@ -130,11 +155,21 @@ function modesLine(context: BudgetContext): BudgetLine[] {
   const tops = sets.flatMap((set) => (set.kind === 'modes' ? [Math.max(...set.modes.map((mode) => mode.l))] : []));
   const top = Math.min(...tops);
   if (top < 4) return [{ ...base, u: null, note: `Modes to ℓ = ${top} give no trend to continue.` }];
-  const [one, two] = [movedBy(context, withSettings(context, { lMax: top - 1 })), movedBy(context, withSettings(context, { lMax: top - 2 }))].map(Math.abs);
+  const [one, two] = [
+    movedBy(context, withSettings(context, { lMax: top - 1 })),
+    movedBy(context, withSettings(context, { lMax: top - 2 })),
+  ].map(Math.abs);
   const ratio = one! / (two! - one!);
-  if (!(ratio >= 0 && ratio < 1)) return [{ ...base, u: null, note: `What ℓ adds does not fall towards ℓ = ${top}: no series to continue.` }];
+  if (!(ratio >= 0 && ratio < 1))
+    return [{ ...base, u: null, note: `What ℓ adds does not fall towards ℓ = ${top}: no series to continue.` }];
   const rest = (one! * ratio) / (1 - ratio);
-  return [{ ...base, u: standardOf(rest), note: `ℓ = ${top} moves the value by ${short(one!, 2)}, ${short(100 * ratio, 2)} % of ℓ = ${top - 1}; the rest of that series, one-sided, over √3.` }];
+  return [
+    {
+      ...base,
+      u: standardOf(rest),
+      note: `ℓ = ${top} moves the value by ${short(one!, 2)}, ${short(100 * ratio, 2)} % of ℓ = ${top - 1}; the rest of that series, one-sided, over √3.`,
+    },
+  ];
 }
 
 const H0_UNCERTAINTY = 0.5;
@@ -143,12 +178,28 @@ const H0_UNCERTAINTY = 0.5;
 function cosmologyLine(context: BudgetContext): BudgetLine[] {
   const { request, traits } = context;
   const { declared } = request;
-  const source = massFrameOf(declared, waveformsOf(request).map((c) => c.given), traits) === 'source';
-  const tied = (traits.horizon && source) || (source && declared.redshift === undefined) || (traits.needsDistance && declared.distanceMpc === undefined && declared.redshift !== undefined);
+  const source =
+    massFrameOf(
+      declared,
+      waveformsOf(request).map((c) => c.given),
+      traits,
+    ) === 'source';
+  const tied =
+    (traits.horizon && source) ||
+    (source && declared.redshift === undefined) ||
+    (traits.needsDistance && declared.distanceMpc === undefined && declared.redshift !== undefined);
   if (!tied) return [];
   const cosmology = declared.cosmology ?? houseCosmology;
   const moved = movedBy(context, withSettings(context, { cosmology: { ...cosmology, h0: cosmology.h0 + H0_UNCERTAINTY } }));
-  return [{ component: 'Cosmology', id: 'E12', group: 'coverage', u: Number.isFinite(moved) ? Math.abs(moved) : null, note: `H₀ = ${cosmology.h0} ± ${H0_UNCERTAINTY} km/s/Mpc.` }];
+  return [
+    {
+      component: 'Cosmology',
+      id: 'E12',
+      group: 'coverage',
+      u: Number.isFinite(moved) ? Math.abs(moved) : null,
+      note: `H₀ = ${cosmology.h0} ± ${H0_UNCERTAINTY} km/s/Mpc.`,
+    },
+  ];
 }
 
 /** Half a unit of the last digit of a number as it is usually printed; the zeros that end a whole number are taken as digits. */
@@ -161,11 +212,21 @@ function halfUnit(x: number): number {
 function parameterLine(context: BudgetContext): BudgetLine[] {
   const { declared } = context.request;
   const { traits } = context;
-  const measured = (['redshift', 'distanceMpc'] as const).filter((name) => declared[name] !== undefined && !traits.horizon && (name === 'redshift' || traits.needsDistance));
+  const measured = (['redshift', 'distanceMpc'] as const).filter(
+    (name) => declared[name] !== undefined && !traits.horizon && (name === 'redshift' || traits.needsDistance),
+  );
   if (measured.length === 0) return [];
   const moves = measured.map((name) => movedBy(context, withSettings(context, { [name]: declared[name]! + halfUnit(declared[name]!) })));
   const sum = Math.sqrt(moves.reduce((total, x) => total + x * x, 0));
-  return [{ component: 'Rounded parameters of the claim', id: 'E13', group: 'coverage', u: Number.isFinite(sum) ? standardOf(sum) : null, note: `Half a unit of the last digit of ${measured.join(' and ')}, over √3.` }];
+  return [
+    {
+      component: 'Rounded parameters of the claim',
+      id: 'E13',
+      group: 'coverage',
+      u: Number.isFinite(sum) ? standardOf(sum) : null,
+      note: `Half a unit of the last digit of ${measured.join(' and ')}, over √3.`,
+    },
+  ];
 }
 
 /**

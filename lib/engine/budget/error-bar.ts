@@ -33,6 +33,10 @@ export const kitOf = (numerics: Numerics, store: SpectrumStore): RouteKit => ({
   scan: createRouteA({ ...numerics, refineStep: false, refineBins: false }, store),
 });
 
+/** Where two orders less move the value by more than this part, the steps are too coarse for the orders to converge, and the last difference says too little. */
+const NOT_CONVERGING = 1e-4;
+const COARSE_FACTOR = 5;
+
 /** More digits than this are a double's own. */
 const DOUBLE_DIGITS = 16;
 
@@ -83,7 +87,9 @@ export function computationError(recipe: Recipe, request: PointRequest, found: E
   let quadrature = Math.abs(base - found.value);
   let largest = { name: 'none', by: 0 };
   for (const { name, numerics } of knobs) {
-    const by = Math.abs(recipe.again(kitOf(numerics, store), request, found) - base);
+    const moved = Math.abs(recipe.again(kitOf(numerics, store), request, found) - base);
+    const coarse = numerics.interpolationOrder < houseNumerics.interpolationOrder && moved > NOT_CONVERGING * Math.abs(base);
+    const by = coarse ? COARSE_FACTOR * moved : moved;
     quadrature += by;
     if (by > largest.by) largest = { name, by };
   }

@@ -53,5 +53,14 @@ export function conditionWaveform(given: Waveform, modes: 'all' | readonly ModeI
     peaks.set(mode, made);
     return made;
   };
-  return { given, whole, negativeM, mirrorAssumed, used, missing: selectModes(whole, { modes, lMax: null, withZeroM: false }).missing, taper, peakOf };
+  return {
+    given,
+    whole,
+    negativeM,
+    mirrorAssumed,
+    used,
+    missing: selectModes(whole, { modes, lMax: null, withZeroM: false }).missing,
+    taper,
+    peakOf,
+  };
 }

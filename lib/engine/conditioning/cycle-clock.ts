@@ -101,7 +101,11 @@ function frequencyAt(track: Track, t: number): number | null {
  * Fails:  null where the record ends first.
  * Source: settings.md rule 2.4 (house rule).
  */
-export function cyclesFrom(end: 'start' | 'end', axis: Float64Array, series: { readonly re: Float64Array; readonly im: Float64Array | null }): CycleClock {
+export function cyclesFrom(
+  end: 'start' | 'end',
+  axis: Float64Array,
+  series: { readonly re: Float64Array; readonly im: Float64Array | null },
+): CycleClock {
   const forward = end === 'start';
   const track = series.im === null ? crossingTrack(axis, series.re, forward) : phaseTrack(axis, series.re, series.im, forward);
   return { timeAfter: (cycles) => timeAfter(track, cycles), frequencyAt: (t) => frequencyAt(track, t) };

@@ -94,7 +94,8 @@ function scaleOf({ declared, a, b, traits }: PointRequest): Scale {
   const cosmology = declared.cosmology ?? houseCosmology;
   const massMsun = declared.totalMassMsun ?? null;
   const massFrame = massFrameOf(declared, waveforms, traits);
-  const fromRedshift = declared.redshift === undefined || !traits.needsDistance || traits.horizon ? null : luminosityDistanceMpc(declared.redshift, cosmology);
+  const fromRedshift =
+    declared.redshift === undefined || !traits.needsDistance || traits.horizon ? null : luminosityDistanceMpc(declared.redshift, cosmology);
   const distanceMpc = declared.distanceMpc ?? fromRedshift;
   if (massFrame === 'detector' || traits.horizon) return { massMsun, massFrame, redshift: 0, distanceMpc };
   const own = a.given.ownDistanceMpc;
@@ -162,14 +163,20 @@ function assemble(request: PointRequest, scale: Scale): DetectorPoint {
  * Fails:  never; what is missing is the answer.
  * Source: our rule: no number is invented that would scale the result.
  */
-export function requiredSettings(waveforms: readonly Waveform[], declared: DeclaredSettings, over: SettingName | null, traits: DetectorTraits): SettingName[] {
+export function requiredSettings(
+  waveforms: readonly Waveform[],
+  declared: DeclaredSettings,
+  over: SettingName | null,
+  traits: DetectorTraits,
+): SettingName[] {
   const has = (name: SettingName): boolean => declared[name] !== undefined || over === name;
   const needed: SettingName[] = [];
   const inMass = waveforms.some((w) => w.unit === 'M' || w.amplitudeUnit !== 'strain');
   if (inMass && !has('totalMassMsun')) needed.push('totalMassMsun');
   const ownDistance = waveforms.every((w) => w.ownDistanceMpc !== null);
   const physical = waveforms.every((w) => w.amplitudeUnit === 'strain');
-  if (traits.needsDistance && !traits.horizon && inMass && !ownDistance && !has('distanceMpc') && !has('redshift')) needed.push('distanceMpc');
+  if (traits.needsDistance && !traits.horizon && inMass && !ownDistance && !has('distanceMpc') && !has('redshift'))
+    needed.push('distanceMpc');
   // A physical strain without a distance of its own has no horizon: there is nothing to scale from.
   if (traits.needsDistance && traits.horizon && physical && !ownDistance) needed.push('distanceMpc');
   const source = massFrameOf(declared, waveforms, traits) === 'source' && !traits.horizon;

@@ -29,7 +29,9 @@ export function selectModes(waveform: Waveform, choice: ModeChoice): SelectedMod
   if (content.kind !== 'modes') return { waveform, missing: [] };
   const { modes: wanted, lMax } = choice;
   const chosen =
-    wanted === 'all' ? content.modes.filter((mode) => choice.withZeroM || mode.m !== 0) : content.modes.filter((mode) => isListed(mode, wanted));
+    wanted === 'all'
+      ? content.modes.filter((mode) => choice.withZeroM || mode.m !== 0)
+      : content.modes.filter((mode) => isListed(mode, wanted));
   const modes = chosen.filter((mode) => lMax === null || mode.l <= lMax);
   const missing = wanted === 'all' ? [] : wanted.filter(([l, m]) => !content.modes.some((mode) => mode.l === l && mode.m === m));
   return { waveform: { ...waveform, content: { kind: 'modes', modes } }, missing };

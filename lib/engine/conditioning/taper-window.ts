@@ -61,7 +61,14 @@ function openEnds(used: Waveform): { start: boolean; end: boolean } {
  * Source: settings.md rule 2.4 (house rule).
  */
 export function measureTaper(used: Waveform, whole: Waveform, taper: 'auto' | 'none' | number): TaperMeasure {
-  const quiet = { window: NO_TAPER, startIsOpen: false, endIsOpen: false, tooShort: false, frequencyAtRampEnd: null, frequencyAtStart: null };
+  const quiet = {
+    window: NO_TAPER,
+    startIsOpen: false,
+    endIsOpen: false,
+    tooShort: false,
+    frequencyAtRampEnd: null,
+    frequencyAtStart: null,
+  };
   const series = clockSeries(whole);
   if (used.domain === 'frequency' || series === null) return quiet;
   const open = openEnds(used);

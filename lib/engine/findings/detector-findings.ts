@@ -35,12 +35,20 @@ export function bandBeyondCurve(point: DetectorPoint): Finding | null {
 
 /** V19, what stops: read again here, so that a curve from anywhere fails closed. */
 export function curveInvalid(noise: NoiseCurve): Finding | null {
-  const bad = (text: string): Finding => ({ code: 'engine/curve-invalid', level: 'stops-lodging', where: noise.name, text, fix: 'Correct the curve or attach another one.' });
-  if (!(noise.fHighHz > noise.fLowHz && noise.fLowHz > 0)) return bad(`The noise curve ${noise.name} covers ${noise.fLowHz} to ${noise.fHighHz} Hz; that is no band.`);
+  const bad = (text: string): Finding => ({
+    code: 'engine/curve-invalid',
+    level: 'stops-lodging',
+    where: noise.name,
+    text,
+    fix: 'Correct the curve or attach another one.',
+  });
+  if (!(noise.fHighHz > noise.fLowHz && noise.fLowHz > 0))
+    return bad(`The noise curve ${noise.name} covers ${noise.fLowHz} to ${noise.fHighHz} Hz; that is no band.`);
   const points = noise.points ?? Float64Array.of(noise.fLowHz, noise.fHighHz);
   for (let i = 0; i < points.length; i++) {
     const s = noise.psd(points[i]!);
-    if (i > 0 && !(points[i]! > points[i - 1]!)) return bad(`The frequency of ${noise.name} goes from ${points[i - 1]} to ${points[i]} Hz; it must rise.`);
+    if (i > 0 && !(points[i]! > points[i - 1]!))
+      return bad(`The frequency of ${noise.name} goes from ${points[i - 1]} to ${points[i]} Hz; it must rise.`);
     if (!(s > 0) || !Number.isFinite(s)) return bad(`The noise curve ${noise.name} is ${s} at ${points[i]} Hz; it must be positive.`);
   }
   return null;
@@ -88,7 +96,11 @@ const NOTHING = 1e-12;
 export function nothingSeen(c: ConditionedWaveform, side: Side, weigh: (l: number, m: number) => number, allSky: boolean): Finding | null {
   const { content } = side.waveform;
   if (content.kind === 'line-of-sight') {
-    const empty = content.plus.every((x) => x === 0) && (content.cross?.every((x) => x === 0) ?? true) && (content.plusIm?.every((x) => x === 0) ?? true) && (content.crossIm?.every((x) => x === 0) ?? true);
+    const empty =
+      content.plus.every((x) => x === 0) &&
+      (content.cross?.every((x) => x === 0) ?? true) &&
+      (content.plusIm?.every((x) => x === 0) ?? true) &&
+      (content.crossIm?.every((x) => x === 0) ?? true);
     return empty ? noSignal(c.given.name, 'at all: its columns are zero') : null;
   }
   const peaks = content.modes.map((mode) => c.peakOf(mode));
@@ -148,7 +160,10 @@ export const startsInBand = (c: ConditionedWaveform, point: DetectorPoint, side:
 /** V07. The level differs: a match of cut signals is a match of the cut signals; a cut loudness is a lower bound. */
 export function signalStartsInBand(c: ConditionedWaveform, points: readonly Affected[], level: FindingLevel): Finding | null {
   const affected = points.filter(({ point, side }) => startsInBand(c, point, side));
-  const worst = affected.reduce<Affected | undefined>((p, q) => (p === undefined || q.side.secondsPerUnit < p.side.secondsPerUnit ? q : p), undefined);
+  const worst = affected.reduce<Affected | undefined>(
+    (p, q) => (p === undefined || q.side.secondsPerUnit < p.side.secondsPerUnit ? q : p),
+    undefined,
+  );
   if (worst === undefined) return null;
   const startHz = startFrequency(c, worst.point)! / worst.side.secondsPerUnit;
   const { fLowHz } = worst.point.band;
@@ -167,9 +182,17 @@ export function signalStartsInBand(c: ConditionedWaveform, points: readonly Affe
 /** V08. The first cycle is below the band but the ramp's end is not, or the record is shorter than its ramps. */
 export function taperRoom(c: ConditionedWaveform, points: readonly Affected[]): Finding | null {
   const base = { code: 'engine/taper-room', level: 'worth-a-look', where: c.given.name } as const;
-  const measured = points.map(({ point, side }) => ({ point, side, taper: c.taper(point.declared.taper ?? 'auto', point.declared.lMax ?? null) }));
+  const measured = points.map(({ point, side }) => ({
+    point,
+    side,
+    taper: c.taper(point.declared.taper ?? 'auto', point.declared.lMax ?? null),
+  }));
   if (measured.some(({ taper }) => taper.tooShort)) {
-    return { ...base, text: `${c.given.name} is shorter than the ramps of its taper (two cycles at an open start, one at an open end); the taper covers the whole record.`, fix: 'Attach a longer record, or declare a shorter taper.' };
+    return {
+      ...base,
+      text: `${c.given.name} is shorter than the ramps of its taper (two cycles at an open start, one at an open end); the taper covers the whole record.`,
+      fix: 'Attach a longer record, or declare a shorter taper.',
+    };
   }
   const cramped = measured.filter(({ point, side, taper }) => {
     const { frequencyAtStart: first, frequencyAtRampEnd: full } = taper;
@@ -192,7 +215,9 @@ export function taperRoom(c: ConditionedWaveform, points: readonly Affected[]): 
 /** Rule 2.5: a declared edge above what the samples carry counts content there as zero. */
 export function bandBeyondSampling(c: ConditionedWaveform, points: readonly Affected[]): Finding | null {
   const topHz = ({ side }: Affected): number => nyquistFrequency(c.given) / side.secondsPerUnit;
-  const affected = points.filter((p) => p.point.declared.fHighHz !== undefined && p.point.declared.fHighHz > topHz(p) * (1 + EDGE_ALLOWANCE));
+  const affected = points.filter(
+    (p) => p.point.declared.fHighHz !== undefined && p.point.declared.fHighHz > topHz(p) * (1 + EDGE_ALLOWANCE),
+  );
   const worst = affected.reduce<Affected | undefined>((p, q) => (p === undefined || topHz(q) < topHz(p) ? q : p), undefined);
   if (worst === undefined) return null;
   const carries = c.given.domain === 'frequency' ? 'holds frequencies' : 'is sampled finely enough for frequencies';

@@ -11,5 +11,8 @@ import { volumeRatio } from './volume-ratio';
 
 /** The one table of what can be claimed; a quantity that is not in it is refused by name. */
 export const quantities: ReadonlyMap<string, Quantity> = new Map(
-  [overlap, match, mismatch, distinguishabilitySnr, snr, snrRatio, volumeRatio, horizonDistance, radiatedEnergy].map((quantity) => [quantity.id, quantity]),
+  [overlap, match, mismatch, distinguishabilitySnr, snr, snrRatio, volumeRatio, horizonDistance, radiatedEnergy].map((quantity) => [
+    quantity.id,
+    quantity,
+  ]),
 );

@@ -76,7 +76,13 @@ const LEAST_RATIO = 0.3;
  * Fails:  never.
  * Source: common practice.
  */
-export function interpolateThroughPolar(axis: Float64Array, series: ComplexSeries, polar: PolarSeries, grid: UniformGrid, order: number): ComplexSeries {
+export function interpolateThroughPolar(
+  axis: Float64Array,
+  series: ComplexSeries,
+  polar: PolarSeries,
+  grid: UniformGrid,
+  order: number,
+): ComplexSeries {
   const [amplitude, phase] = interpolatePair({ axis, first: polar.amplitude, second: polar.phase }, grid, order);
   const [re, im] = interpolatePair({ axis, first: series.re, second: series.im }, grid, order);
   const half = order >> 1;

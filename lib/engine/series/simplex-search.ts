@@ -22,7 +22,12 @@ interface Limits {
  * Fails:  never; returns the best point seen.
  * Source: Nelder & Mead 1965 (from memory), standard coefficients.
  */
-export function climbSimplex(f: (at: readonly number[]) => number, start: readonly number[], steps: readonly number[], limits: Limits): Maximum {
+export function climbSimplex(
+  f: (at: readonly number[]) => number,
+  start: readonly number[],
+  steps: readonly number[],
+  limits: Limits,
+): Maximum {
   const vertexAt = (at: readonly number[]): Vertex => ({ at, value: f(at) });
   let simplex = [vertexAt(start), ...start.map((_, i) => vertexAt(start.map((x, j) => (j === i ? x + steps[i]! : x))))];
   let used = simplex.length;

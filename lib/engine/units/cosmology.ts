@@ -75,4 +75,7 @@ export function redshiftAt(distanceMpc: number, cosmology: Cosmology): number {
  * Source: dV_c/dz = 4π D_c² (c/H₀)/E(z) for a flat universe.
  */
 export const timeDilatedVolumeMpc3 = (z: number, cosmology: Cosmology): number =>
-  overRedshift((x) => (4 * Math.PI * comovingDistanceMpc(x, cosmology) ** 2 * (C_KM_PER_S / cosmology.h0)) / expansion(x, cosmology) / (1 + x), z);
+  overRedshift(
+    (x) => (4 * Math.PI * comovingDistanceMpc(x, cosmology) ** 2 * (C_KM_PER_S / cosmology.h0)) / expansion(x, cosmology) / (1 + x),
+    z,
+  );

@@ -19,12 +19,18 @@ export interface FigureContext {
 const MOST_POINTS = 1500;
 const INTEGRAND_POINTS = 600;
 
-const line = (label: string, role: FigureSeries['role'], values: readonly (number | null)[], more: Partial<FigureSeries> = {}): FigureSeries => ({ label, unit: '', role, axis: 'left', scale: 'linear', values, ...more });
+const line = (
+  label: string,
+  role: FigureSeries['role'],
+  values: readonly (number | null)[],
+  more: Partial<FigureSeries> = {},
+): FigureSeries => ({ label, unit: '', role, axis: 'left', scale: 'linear', values, ...more });
 
 /** Strain in the detector at times in seconds, for drawing: local interpolation of the tapered record. */
 function traceOf(side: Side, point: DetectorPoint, timesS: readonly number[], turn: { shiftS: number; phaseRad: number }): number[] {
   const source = timeSource(side.waveform);
-  const { plus, cross } = typeof point.response === 'object' ? point.response : point.response === 'cross' ? { plus: 0, cross: 1 } : { plus: 1, cross: 0 };
+  const { plus, cross } =
+    typeof point.response === 'object' ? point.response : point.response === 'cross' ? { plus: 0, cross: 1 } : { plus: 1, cross: 0 };
   const first = timesS[0]!;
   const dt = (timesS[timesS.length - 1]! - first) / Math.max(1, timesS.length - 1);
   const t0 = (first - turn.shiftS) / side.secondsPerUnit;
@@ -78,17 +84,39 @@ function waveformsFigure({ found, shown, worst }: FigureContext): Figure[] {
   if (point.b !== null) {
     const { outcome } = found[worst]!;
     const modesTurn = point.response === 'complex' && point.b.waveform.content.kind === 'modes';
-    const b = { ...point.b, azimuthRad: point.b.azimuthRad + (modesTurn ? (outcome?.phaseShiftRad ?? 0) : 0), inclinationRad: outcome?.inclinationRad ?? point.b.inclinationRad };
+    const b = {
+      ...point.b,
+      azimuthRad: point.b.azimuthRad + (modesTurn ? (outcome?.phaseShiftRad ?? 0) : 0),
+      inclinationRad: outcome?.inclinationRad ?? point.b.inclinationRad,
+    };
     const factor = outcome?.massFactor ?? 1;
     const scaled = { ...b, secondsPerUnit: b.secondsPerUnit * factor, strainPerUnit: b.strainPerUnit * factor };
-    const moved = traceOf(scaled, point, timesS, { shiftS: outcome?.timeShiftS ?? 0, phaseRad: modesTurn ? -2 * (outcome?.polarisationRad ?? 0) : (outcome?.phaseShiftRad ?? 0) });
+    const moved = traceOf(scaled, point, timesS, {
+      shiftS: outcome?.timeShiftS ?? 0,
+      phaseRad: modesTurn ? -2 * (outcome?.polarisationRad ?? 0) : (outcome?.phaseShiftRad ?? 0),
+    });
     series.push(line(`${point.b.waveform.name}, aligned`, 'recomputed', moved, { unit: 'strain' }));
-    series.push(line('difference', 'residual', a.map((x, i) => x - moved[i]!), { unit: 'strain' }));
+    series.push(
+      line(
+        'difference',
+        'residual',
+        a.map((x, i) => x - moved[i]!),
+        { unit: 'strain' },
+      ),
+    );
   }
-  return [{ kind: 'waveforms', title: 'Strain in the detector around the peak', x: { label: 'time', unit: 's', scale: 'linear', values: timesS }, series }];
+  return [
+    {
+      kind: 'waveforms',
+      title: 'Strain in the detector around the peak',
+      x: { label: 'time', unit: 's', scale: 'linear', values: timesS },
+      series,
+    },
+  ];
 }
 
-const logSpaced = (low: number, high: number, n: number): number[] => Array.from({ length: n }, (_, i) => low * (high / low) ** (i / (n - 1)));
+const logSpaced = (low: number, high: number, n: number): number[] =>
+  Array.from({ length: n }, (_, i) => low * (high / low) ** (i / (n - 1)));
 
 function integrandFigure({ walk, shown, worst }: FigureContext): Figure {
   const point = shown[worst]!;
@@ -99,30 +127,68 @@ function integrandFigure({ walk, shown, worst }: FigureContext): Figure {
   const series = [
     line(`${point.a.waveform.name}: dρ²/d ln f`, 'claimed', curve(point.a), weighted),
     ...(point.b === null ? [] : [line(`${point.b.waveform.name}: dρ²/d ln f`, 'recomputed', curve(point.b), weighted)]),
-    line(`noise ${noise.name}`, 'noise', f.map((x) => Math.sqrt(noise.psd(Math.min(Math.max(x, noise.fLowHz), noise.fHighHz)))), { unit: 'Hz^−1/2', axis: 'right', scale: 'log' }),
+    line(
+      `noise ${noise.name}`,
+      'noise',
+      f.map((x) => Math.sqrt(noise.psd(Math.min(Math.max(x, noise.fLowHz), noise.fHighHz)))),
+      { unit: 'Hz^−1/2', axis: 'right', scale: 'log' },
+    ),
   ];
-  return { kind: 'integrand', title: 'Where in the band the loudness comes from', x: { label: 'frequency', unit: 'Hz', scale: 'log', values: f }, series };
+  return {
+    kind: 'integrand',
+    title: 'Where in the band the loudness comes from',
+    x: { label: 'frequency', unit: 'Hz', scale: 'log', values: f },
+    series,
+  };
 }
 
 /** Thinned evenly, ends kept. */
-const thinned = (n: number): number[] => (n <= MOST_POINTS ? Array.from({ length: n }, (_, i) => i) : Array.from({ length: MOST_POINTS }, (_, k) => Math.round((k * (n - 1)) / (MOST_POINTS - 1))));
+const thinned = (n: number): number[] =>
+  n <= MOST_POINTS
+    ? Array.from({ length: n }, (_, i) => i)
+    : Array.from({ length: MOST_POINTS }, (_, k) => Math.round((k * (n - 1)) / (MOST_POINTS - 1)));
 
 function sweepFigure({ walk, points }: FigureContext): Figure[] {
   const { over, claimed } = walk.request;
   if (over === null || points.length < 2) return [];
   const kept = thinned(points.length).sort((p, q) => over.values[p]! - over.values[q]!);
   const at = (i: number): MeasuredPoint => points[i]!;
-  const edge = (sign: number) => kept.map((i) => (at(i).value === null || at(i).expandedUncertainty === null ? null : at(i).value! + sign * at(i).expandedUncertainty!));
+  const edge = (sign: number) =>
+    kept.map((i) => (at(i).value === null || at(i).expandedUncertainty === null ? null : at(i).value! + sign * at(i).expandedUncertainty!));
   const x = kept.map((i) => over.values[i]!);
   const wide = x[0]! > 0 && x[x.length - 1]! / x[0]! > 20;
   const series = [
-    line('recomputed', 'recomputed', kept.map((i) => at(i).value)),
+    line(
+      'recomputed',
+      'recomputed',
+      kept.map((i) => at(i).value),
+    ),
     line('recomputed − U', 'band-low', edge(-1)),
     line('recomputed + U', 'band-high', edge(1)),
-    line('claimed', 'claimed', kept.map((i) => claimed[i] ?? null)),
+    line(
+      'claimed',
+      'claimed',
+      kept.map((i) => claimed[i] ?? null),
+    ),
   ];
-  const unit = over.setting === 'totalMassMsun' ? 'M☉' : over.setting.endsWith('Hz') ? 'Hz' : over.setting.endsWith('Rad') ? 'rad' : over.setting.endsWith('Mpc') ? 'Mpc' : '';
-  return [{ kind: 'sweep', title: `Value over ${over.setting}`, x: { label: over.setting, unit, scale: wide ? 'log' : 'linear', values: x }, series }];
+  const unit =
+    over.setting === 'totalMassMsun'
+      ? 'M☉'
+      : over.setting.endsWith('Hz')
+        ? 'Hz'
+        : over.setting.endsWith('Rad')
+          ? 'rad'
+          : over.setting.endsWith('Mpc')
+            ? 'Mpc'
+            : '';
+  return [
+    {
+      kind: 'sweep',
+      title: `Value over ${over.setting}`,
+      x: { label: over.setting, unit, scale: wide ? 'log' : 'linear', values: x },
+      series,
+    },
+  ];
 }
 
 /**

@@ -71,7 +71,10 @@ function bracketsIn(z: readonly number[], values: readonly number[]): Bracket[] 
 /** Route A: the scan of the rule, 400 points of a fast sweep. */
 function scanned({ scan }: RouteKit, request: PointRequest): Bracket[] {
   const z = logSpaced(SCAN_POINTS);
-  return bracketsIn(z, z.map((at) => excess(scan, request, at)));
+  return bracketsIn(
+    z,
+    z.map((at) => excess(scan, request, at)),
+  );
 }
 
 /** Cubic through the four nearest of evenly spaced values. */
@@ -96,7 +99,10 @@ function interpolated({ scan }: RouteKit, request: PointRequest): Bracket[] {
   const { cosmology, threshold } = detectorPoint(request);
   const lnRho = ownRedshifts(OWN_POINTS).map((z) => Math.max(SILENT, Math.log(loudnessAt(scan, request, z)) || SILENT));
   const fine = ownRedshifts(FINE * (OWN_POINTS - 1) + 1);
-  return bracketsIn(fine, fine.map((z, i) => cubicAt(lnRho, i / FINE) - Math.log(luminosityDistanceMpc(z, cosmology) * threshold)));
+  return bracketsIn(
+    fine,
+    fine.map((z, i) => cubicAt(lnRho, i / FINE) - Math.log(luminosityDistanceMpc(z, cosmology) * threshold)),
+  );
 }
 
 /** A bracket read off an interpolation is widened until the route itself changes sign there. */

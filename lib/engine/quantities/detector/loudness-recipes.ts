@@ -68,11 +68,17 @@ export const snrRatioRecipe: Recipe = {
 const isComoving = (declared: DeclaredSettings): boolean => declared.rateLaw === 'comoving';
 
 /** Horizons of both waveforms by themselves, as one role each. */
-function comovingVolumes(kit: Parameters<Recipe['evaluate']>[0], request: Parameters<Recipe['evaluate']>[1], near?: readonly number[]): { volumes: number[]; redshifts: number[] } {
+function comovingVolumes(
+  kit: Parameters<Recipe['evaluate']>[0],
+  request: Parameters<Recipe['evaluate']>[1],
+  near?: readonly number[],
+): { volumes: number[]; redshifts: number[] } {
   const declared = { ...request.declared, average: 'optimal' as const };
   const { cosmology } = detectorPoint(request);
   const roles = [request.a, request.b ?? request.a].map((a) => ({ ...request, declared, a, b: null }));
-  const redshifts = roles.map((role, i) => (near === undefined ? horizonOf(kit, role).redshift : horizonAgain(kit, role, near[i]!).redshift));
+  const redshifts = roles.map((role, i) =>
+    near === undefined ? horizonOf(kit, role).redshift : horizonAgain(kit, role, near[i]!).redshift,
+  );
   return { volumes: redshifts.map((z) => timeDilatedVolumeMpc3(z, cosmology)), redshifts };
 }
 
@@ -83,7 +89,11 @@ export const volumeRatioRecipe: Recipe = {
     const ratio = rhoA / rhoB;
     if (!isComoving(request.declared)) return { value: ratio ** 3, components: { ratio } };
     const { volumes, redshifts } = comovingVolumes(kit, request);
-    return { value: volumes[0]! / volumes[1]!, components: { ratio, redshiftA: redshifts[0]!, redshiftB: redshifts[1]! }, roots: redshifts };
+    return {
+      value: volumes[0]! / volumes[1]!,
+      components: { ratio, redshiftA: redshifts[0]!, redshiftB: redshifts[1]! },
+      roots: redshifts,
+    };
   },
   again: (kit, request, found) => {
     if (!isComoving(request.declared)) return volumeRatioRecipe.evaluate(kit, request).value;

@@ -35,7 +35,8 @@ function cubeOverPolarisation({ plusPlus, crossCross, plusCross }: ResponseGram)
   const mean = (plusPlus + crossCross) / 2;
   const swing = Math.hypot((plusPlus - crossCross) / 2, plusCross);
   let sum = 0;
-  for (let i = 0; i < POLARISATION_STEPS; i++) sum += Math.max(0, mean + swing * Math.cos((2 * Math.PI * (i + 0.5)) / POLARISATION_STEPS)) ** 1.5;
+  for (let i = 0; i < POLARISATION_STEPS; i++)
+    sum += Math.max(0, mean + swing * Math.cos((2 * Math.PI * (i + 0.5)) / POLARISATION_STEPS)) ** 1.5;
   return sum / POLARISATION_STEPS;
 }
 
@@ -71,7 +72,11 @@ function sightsFor(side: Side): Sight[] {
   // With one |m| a change of azimuth only turns or shifts the signal, and no SNR depends on it.
   const azimuths = sizes.size <= 1 ? 1 : 4 * Math.max(...sizes);
   return legendreRule(8 + 4 * lTop).flatMap(({ x, w }) =>
-    Array.from({ length: azimuths }, (_, j) => ({ inclinationRad: Math.acos(x), azimuthRad: (2 * Math.PI * j) / azimuths, weight: w / 2 / azimuths })),
+    Array.from({ length: azimuths }, (_, j) => ({
+      inclinationRad: Math.acos(x),
+      azimuthRad: (2 * Math.PI * j) / azimuths,
+      weight: w / 2 / azimuths,
+    })),
   );
 }
 

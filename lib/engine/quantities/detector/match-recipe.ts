@@ -5,7 +5,11 @@ import { powerInResponse } from './loudness';
 import { ROUNDING_FLOOR, type Evaluated, type Recipe } from './recipe';
 
 /** A heavier template is longer and, at the same distance, stronger. */
-const rescale = (b: Side, factor: number): Side => ({ ...b, secondsPerUnit: b.secondsPerUnit * factor, strainPerUnit: b.strainPerUnit * factor });
+const rescale = (b: Side, factor: number): Side => ({
+  ...b,
+  secondsPerUnit: b.secondsPerUnit * factor,
+  strainPerUnit: b.strainPerUnit * factor,
+});
 
 export const matchRequest = (point: DetectorPoint): MatchRequest => ({
   a: point.a,
@@ -47,7 +51,11 @@ const placement = (point: DetectorPoint, outcome: MatchOutcome): Record<string, 
 const traits = () => ({ maximise: ['time', 'phase'], loudness: false, absolute: false, needsDistance: false, horizon: false }) as const;
 
 /** Builds a recipe on one maximised product; `read` takes the value and components from its outcome. */
-function recipeOf(read: (point: DetectorPoint, outcome: MatchOutcome, route: DetectorRoute) => Evaluated, value: (point: DetectorPoint, outcome: MatchOutcome) => number, floor: Recipe['floor']): Recipe {
+function recipeOf(
+  read: (point: DetectorPoint, outcome: MatchOutcome, route: DetectorRoute) => Evaluated,
+  value: (point: DetectorPoint, outcome: MatchOutcome) => number,
+  floor: Recipe['floor'],
+): Recipe {
   return {
     traits,
     evaluate: ({ route }, request) => {

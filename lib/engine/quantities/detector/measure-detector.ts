@@ -51,7 +51,14 @@ function step(watch: Watch, fraction: number, doing: string): void {
 }
 
 /** One route over some points; null where it was not asked. */
-function evaluateAt(walk: Walk, kit: RouteKit, indices: readonly number[], watch: Watch, span: readonly [number, number], doing: string): Map<number, Evaluated> {
+function evaluateAt(
+  walk: Walk,
+  kit: RouteKit,
+  indices: readonly number[],
+  watch: Watch,
+  span: readonly [number, number],
+  doing: string,
+): Map<number, Evaluated> {
   const found = new Map<number, Evaluated>();
   indices.forEach((i, k) => {
     step(watch, span[0] + ((span[1] - span[0]) * k) / indices.length, doing);
@@ -110,7 +117,15 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
   const bars = fromNeighbours(found.length, new Map([...errors].map(([i, error]) => [i, error.expanded])));
   step(watch, 0.9, 'error budget');
   const shown = requests.map((r, i) => recipe.shownPoint(r, found[i]!));
-  const budget = detectorBudget({ recipe, kit: walk.kitA, request: requests[worst]!, traits: requests[worst]!.traits, found: found[worst]!, error: errors.get(worst)!, store });
+  const budget = detectorBudget({
+    recipe,
+    kit: walk.kitA,
+    request: requests[worst]!,
+    traits: requests[worst]!.traits,
+    found: found[worst]!,
+    error: errors.get(worst)!,
+    store,
+  });
   const points = found.map((here, i): MeasuredPoint => {
     const remarks = remarksOf(walk, here, shown[i]!);
     const components = { ...here.components, ...recipe.alsoShown?.(requests[i]!, store) };
@@ -124,7 +139,13 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
     };
   });
   const { a, b } = requests[0]!;
-  const used = usedSettings({ points: shown, waveforms: [a, ...(b && b !== a ? [b] : [])], traits: requests[0]!.traits, allowed: quantity.settings, swept: request.over?.setting ?? null });
+  const used = usedSettings({
+    points: shown,
+    waveforms: [a, ...(b && b !== a ? [b] : [])],
+    traits: requests[0]!.traits,
+    allowed: quantity.settings,
+    swept: request.over?.setting ?? null,
+  });
   step(watch, 0.97, 'figures');
   const figures = request.withFigures ? detectorFigures({ walk, found, shown, worst, points }) : [];
   return { points, budget, findings: findingsOf(quantity, requests, found), ...used, routeBPoints, figures };

@@ -11,10 +11,12 @@ import type { Evaluated } from './recipe';
 
 const roleWaveforms = ({ a, b }: PointRequest): ConditionedWaveform[] => (b === null || b === a ? [a] : [a, b]);
 
-const harmonicSize = (side: Side) => (l: number, m: number): number => {
-  const y = spinWeightedHarmonic(l, m, side.inclinationRad, side.azimuthRad);
-  return Math.hypot(y.re, y.im);
-};
+const harmonicSize =
+  (side: Side) =>
+  (l: number, m: number): number => {
+    const y = spinWeightedHarmonic(l, m, side.inclinationRad, side.azimuthRad);
+    return Math.hypot(y.re, y.im);
+  };
 
 const stop = (code: string, where: string, text: string, fix: string): Finding => ({ code, level: 'stops-lodging', where, text, fix });
 
@@ -25,11 +27,64 @@ function waveformStops(request: PointRequest, point: DetectorPoint): (Finding | 
     const foreign = variable === 'phi2' || variable === 'luminosity';
     const frozen = request.declared.massFrame === 'source' && !canRescale(c.given);
     return [
-      foreign ? stop('engine/not-a-strain', name, `${name} holds ${variable}, from which no strain follows.`, 'Claim a quantity of gravitational waves on strain, news or ψ₄.') : null,
-      frozen ? stop('engine/mass-not-rescalable', name, `${name} is a physical strain without a mass and distance of its own; a source-frame mass cannot be applied to it.`, 'Give totalMassMsun and distanceMpc beside the file, or declare massFrame "detector".') : null,
-      Number.isFinite(point.a.secondsPerUnit) ? null : stop('engine/setting-missing', name, `The mass or the redshift of ${name} is not known.`, 'Declare totalMassMsun, and redshift or distanceMpc for a source-frame mass.'),
+      foreign
+        ? stop(
+            'engine/not-a-strain',
+            name,
+            `${name} holds ${variable}, from which no strain follows.`,
+            'Claim a quantity of gravitational waves on strain, news or ψ₄.',
+          )
+        : null,
+      frozen
+        ? stop(
+            'engine/mass-not-rescalable',
+            name,
+            `${name} is a physical strain without a mass and distance of its own; a source-frame mass cannot be applied to it.`,
+            'Give totalMassMsun and distanceMpc beside the file, or declare massFrame "detector".',
+          )
+        : null,
+      Number.isFinite(point.a.secondsPerUnit)
+        ? null
+        : stop(
+            'engine/setting-missing',
+            name,
+            `The mass or the redshift of ${name} is not known.`,
+            'Declare totalMassMsun, and redshift or distanceMpc for a source-frame mass.',
+          ),
     ];
   });
+}
+
+/** Fewer samples than this are no curve that two routes could read alike. */
+const LEAST_SAMPLES = 16;
+
+function shortStops(request: PointRequest): (Finding | null)[] {
+  return roleWaveforms(request).map(({ given }) =>
+    given.axis.length >= LEAST_SAMPLES
+      ? null
+      : stop(
+          'engine/too-few-points',
+          given.name,
+          `${given.name} has ${given.axis.length} samples; at least ${LEAST_SAMPLES} are needed to read it between them.`,
+          'Attach the waveform with more samples.',
+        ),
+  );
+}
+
+/** Records further apart than this many of their own lengths share no time; only a free shift brings them together. */
+const MOST_LENGTHS_APART = 50;
+
+function apartStop(point: DetectorPoint): Finding | null {
+  const { a, b } = point;
+  if (b === null || point.maximise.includes('time') || a.waveform.domain !== 'time' || b.waveform.domain !== 'time') return null;
+  const [from, to] = [a, b].map(({ waveform: { axis }, secondsPerUnit }) => ({
+    start: axis[0]! * secondsPerUnit,
+    end: axis[axis.length - 1]! * secondsPerUnit,
+  }));
+  const gap = Math.max(to!.start - from!.end, from!.start - to!.end);
+  if (!(gap > MOST_LENGTHS_APART * (from!.end - from!.start + to!.end - to!.start))) return null;
+  const text = `${a.waveform.name} ends at ${look.short(from!.end)} s and ${b.waveform.name} starts at ${look.short(to!.start)} s, as the files time them (the other way round, ${look.short(from!.start)} and ${look.short(to!.end)} s): they share no time.`;
+  return stop('engine/records-far-apart', b.waveform.name, text, 'Shift one of the files, or claim a match, which moves b in time.');
 }
 
 function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | null)[] {
@@ -38,8 +93,22 @@ function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | 
   const turned = maximise.includes('polarisation') && response !== 'complex';
   const inclined = maximise.includes('inclination') && request.b !== null && request.b.given.content.kind !== 'modes';
   return [
-    turned ? stop('engine/polarisation-needs-complex', 'maximise', 'The polarisation can only be maximised over when both polarisations are used; the response of this claim is one of them.', 'Declare response "complex", or leave out "polarisation".') : null,
-    inclined ? stop('engine/inclination-needs-modes', lacking!.given.name, 'The inclination can only be maximised over for a waveform given as modes.', 'Attach the modes, or leave out "inclination".') : null,
+    turned
+      ? stop(
+          'engine/polarisation-needs-complex',
+          'maximise',
+          'The polarisation can only be maximised over when both polarisations are used; the response of this claim is one of them.',
+          'Declare response "complex", or leave out "polarisation".',
+        )
+      : null,
+    inclined
+      ? stop(
+          'engine/inclination-needs-modes',
+          lacking!.given.name,
+          'The inclination can only be maximised over for a waveform given as modes.',
+          'Attach the modes, or leave out "inclination".',
+        )
+      : null,
   ];
 }
 
@@ -49,7 +118,13 @@ function pointStops(request: PointRequest): Finding[] {
   const c = roleWaveforms(request);
   const sides = [point.a, ...(point.b === null ? [] : [point.b])];
   const allSky = point.average === 'sky-orientation' || point.average === 'volume';
-  const empty = band.fHighHz > band.fLowHz ? null : look.noSignal(request.a.given.name, `between ${look.short(band.fLowHz, 6)} and ${look.short(band.fHighHz, 6)} Hz: its samples carry nothing above the lower edge`);
+  const empty =
+    band.fHighHz > band.fLowHz
+      ? null
+      : look.noSignal(
+          request.a.given.name,
+          `between ${look.short(band.fLowHz, 6)} and ${look.short(band.fHighHz, 6)} Hz: its samples carry nothing above the lower edge`,
+        );
   const found = [
     ...waveformStops(request, point),
     look.curveInvalid(request.noise),
@@ -57,6 +132,8 @@ function pointStops(request: PointRequest): Finding[] {
     look.averageTwice(point),
     look.averageWithoutModes(point, c),
     ...maximiseStops(point, request),
+    ...shortStops(request),
+    apartStop(point),
     request.traits.horizon ? null : empty,
     ...c.map((waveform, i) => look.nothingSeen(waveform, sides[i] ?? sides[0]!, harmonicSize(sides[i] ?? sides[0]!), allSky)),
   ];
@@ -64,7 +141,9 @@ function pointStops(request: PointRequest): Finding[] {
 }
 
 /** One entry per text: points of a sweep often stop for the same reason. */
-const distinct = (findings: readonly Finding[]): Finding[] => [...new Map(findings.map((f) => [`${f.code}|${f.where}|${f.text}`, f])).values()];
+const distinct = (findings: readonly Finding[]): Finding[] => [
+  ...new Map(findings.map((f) => [`${f.code}|${f.where}|${f.text}`, f])).values(),
+];
 
 /** What makes a claim impossible to compute, read off before any transform; one message for each cause. */
 export function stopsOf(_quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[]): Finding[] {
@@ -83,7 +162,12 @@ export function valueStops(_quantity: DetectorQuantity, walk: Walk, found: reado
     if (Number.isFinite(here.value) && !(here.value === 0 && request.traits.loudness)) return [];
     const point = detectorPoint(request);
     if (request.traits.horizon && here.roots === undefined) return [look.noHorizon(request.a.given.name, point.threshold)];
-    return [look.noSignal(request.a.given.name, `between ${look.short(point.band.fLowHz, 6)} and ${look.short(point.band.fHighHz, 6)} Hz${request.b ? `, or ${request.b.given.name} has none` : ''}, or the value is not finite`)];
+    return [
+      look.noSignal(
+        request.a.given.name,
+        `between ${look.short(point.band.fLowHz, 6)} and ${look.short(point.band.fHighHz, 6)} Hz${request.b ? `, or ${request.b.given.name} has none` : ''}, or the value is not finite`,
+      ),
+    ];
   });
   return distinct(stops.length > 0 ? stops.slice(0, 1) : blindResponse(walk));
 }
@@ -117,6 +201,8 @@ export function findingsOf(quantity: DetectorQuantity, requests: readonly PointR
       look.bandBeyondSampling(c, affected),
     ];
   });
-  const roots = (found ?? []).map((here, i) => look.severalRoots(requests[i]!.a.given.name, first.traits.horizon && requests[i]!.b === null ? (here.roots ?? []) : []));
+  const roots = (found ?? []).map((here, i) =>
+    look.severalRoots(requests[i]!.a.given.name, first.traits.horizon && requests[i]!.b === null ? (here.roots ?? []) : []),
+  );
   return distinct([...perWaveform, ...roots].filter((finding) => finding !== null));
 }

@@ -50,7 +50,13 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'totalMassMsun', value: (p) => p.massMsun, unit: 'M☉', used: point.massMsun !== null, matters: false },
     { name: 'massFrame', value: (p) => p.massFrame, used: masses, matters: masses },
     { name: 'redshift', value: (p) => p.redshift, used: source && !traits.horizon, matters: true },
-    { name: 'distanceMpc', value: (p) => p.distanceMpc ?? given[0]!.ownDistanceMpc, unit: 'Mpc', used: traits.needsDistance && !traits.horizon, matters: toDistance },
+    {
+      name: 'distanceMpc',
+      value: (p) => p.distanceMpc ?? given[0]!.ownDistanceMpc,
+      unit: 'Mpc',
+      used: traits.needsDistance && !traits.horizon,
+      matters: toDistance,
+    },
     { name: 'fLowHz', value: (p) => p.band.fLowHz, unit: 'Hz', used: true, matters: true },
     { name: 'fHighHz', value: (p) => p.band.fHighHz, unit: 'Hz', used: true, matters: true },
     { name: 'maximise', value: (p) => p.maximise, used: traits.maximise !== null, matters: true },
@@ -60,7 +66,12 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'response', value: (p) => p.response, used: optimal, matters: true },
     { name: 'modes', value: (p) => p.declared.modes ?? 'all', used: modes, matters: several },
     { name: 'lMax', value: (p) => p.declared.lMax, used: declared.lMax !== undefined, matters: false },
-    { name: 'average', value: (p) => p.average, used: traits.loudness && !(declared.rateLaw === 'comoving'), matters: !point.band.noise.alreadyAveraged },
+    {
+      name: 'average',
+      value: (p) => p.average,
+      used: traits.loudness && !(declared.rateLaw === 'comoving'),
+      matters: !point.band.noise.alreadyAveraged,
+    },
     { name: 'detectors', value: (p) => p.detectors, used: traits.absolute, matters: true },
     { name: 'armAngleDeg', value: (p) => p.armAngleDeg, unit: '°', used: traits.absolute, matters: true },
     { name: 'taper', value: (p) => p.declared.taper ?? 'auto', used: given.some((w) => w.domain === 'time'), matters: open },
@@ -92,9 +103,15 @@ function shownValue(row: Row, points: readonly DetectorPoint[]): unknown {
 export function usedSettings(context: SettingsContext): { settings: UsedSetting[]; assumed: string[] } {
   const { points, swept } = context;
   const { declared } = points[0]!;
-  const standing = ({ name }: Row): UsedSetting['standing'] => (name === swept ? 'swept' : name !== 'negativeM' && declared[name] !== undefined ? 'declared' : 'assumed');
+  const standing = ({ name }: Row): UsedSetting['standing'] =>
+    name === swept ? 'swept' : name !== 'negativeM' && declared[name] !== undefined ? 'declared' : 'assumed';
   const rows = rowsOf(context).filter((row) => row.used);
-  const settings = rows.map((row): UsedSetting => ({ name: row.name, value: shownValue(row, points), standing: standing(row), ...(row.unit === undefined ? {} : { unit: row.unit }) }));
+  const settings = rows.map((row): UsedSetting => ({
+    name: row.name,
+    value: shownValue(row, points),
+    standing: standing(row),
+    ...(row.unit === undefined ? {} : { unit: row.unit }),
+  }));
   // A file's own mass or distance was not assumed by us.
   const kept = settings.filter(({ name, standing: how }) => !(how === 'assumed' && (name === 'totalMassMsun' || name === 'lMax')));
   return { settings: kept, assumed: rows.filter((row) => row.matters && standing(row) === 'assumed').map((row) => row.name) };

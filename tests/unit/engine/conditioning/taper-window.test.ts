@@ -67,7 +67,16 @@ describe('the taper', () => {
 
   it('rises as a squared sine, is 1 between, 0 outside', () => {
     const window = { start: { from: 0, to: 4 }, end: { from: 8, to: 10 } };
-    expect([-1, 0, 2, 4, 6, 9, 10, 11].map((t) => taperWeightAt(window, t))).toEqual([0, 0, expect.closeTo(0.5, 12), 1, 1, expect.closeTo(0.5, 12), 0, 0]);
+    expect([-1, 0, 2, 4, 6, 9, 10, 11].map((t) => taperWeightAt(window, t))).toEqual([
+      0,
+      0,
+      expect.closeTo(0.5, 12),
+      1,
+      1,
+      expect.closeTo(0.5, 12),
+      0,
+      0,
+    ]);
   });
 });
 
@@ -89,7 +98,11 @@ describe('modes with m < 0', () => {
   });
 
   it('are taken as given when there are any, dropped on "none", and never doubled', () => {
-    const both = wave(mode(2, 2, omega, steady), mode(2, -2, omega, () => 0.5), mode(3, 3, omega, steady));
+    const both = wave(
+      mode(2, 2, omega, steady),
+      mode(2, -2, omega, () => 0.5),
+      mode(3, 3, omega, steady),
+    );
     const count = (negativeM: 'mirror' | 'given' | 'none' | null) => {
       const { content } = completeModes({ ...both, negativeM }).waveform;
       return content.kind === 'modes' ? content.modes.map(({ l, m }) => `${l},${m}`) : [];
@@ -108,7 +121,15 @@ describe('modes with m < 0', () => {
     expect(names('all', null)).toEqual(['2,2', '3,3']);
     expect(names('all', null, true)).toEqual(['2,2', '2,0', '3,3']);
     expect(names('all', 2)).toEqual(['2,2']);
-    expect(names([[2, 0], [4, 4]], null)).toEqual(['2,0']);
+    expect(
+      names(
+        [
+          [2, 0],
+          [4, 4],
+        ],
+        null,
+      ),
+    ).toEqual(['2,0']);
     expect(selectModes(set, { modes: [[4, 4]], lMax: null, withZeroM: false }).missing).toEqual([[4, 4]]);
   });
 });

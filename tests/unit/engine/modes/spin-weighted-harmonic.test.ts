@@ -2,7 +2,15 @@ import { describe, expect, it } from 'vitest';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
 
 const pairs = [
-  [2, 2], [2, -2], [2, 0], [3, 3], [3, -1], [4, 4], [4, 2], [8, -5], [12, 11],
+  [2, 2],
+  [2, -2],
+  [2, 0],
+  [3, 3],
+  [3, -1],
+  [4, 4],
+  [4, 2],
+  [8, -5],
+  [12, 11],
 ] as const;
 
 /** ∫ Y Y'* over the sphere by products of rules exact for these degrees. */

@@ -1,10 +1,12 @@
 import { describe, expect, it } from 'vitest';
 import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
+import { quantities } from '@/lib/engine/quantities/registry';
 import { binary, columns, curve, inMasses, measured, type Claim } from '../../../support/detector-claims';
 
 const a = binary('A');
 const settings = { totalMassMsun: 150, distanceMpc: 500, fLowHz: 20 } as const;
-const snr = (more: Partial<Claim> = {}, changed: object = {}) => measured({ quantity: 'snr', a, ...more, settings: { ...settings, ...changed } });
+const snr = (more: Partial<Claim> = {}, changed: object = {}) =>
+  measured({ quantity: 'snr', a, ...more, settings: { ...settings, ...changed } });
 const codes = (m: ReturnType<typeof snr>) => m.findings.map(({ code, level }) => `${code} ${level}`);
 
 function stopped(m: ReturnType<typeof snr>, code: string): void {
@@ -43,7 +45,20 @@ describe('what stops a claim', () => {
   it('a line of sight or a response without signal', () => {
     stopped(snr({ a: { ...a, negativeM: 'none' } }, { inclinationRad: Math.PI }), 'engine/no-signal');
     stopped(snr({}, { modes: [[3, 3]] }), 'engine/no-signal');
-    stopped(snr({}, { modes: [[2, 2], [2, -2]], inclinationRad: Math.PI / 2, response: 'cross' }), 'engine/no-signal');
+    stopped(
+      snr(
+        {},
+        {
+          modes: [
+            [2, 2],
+            [2, -2],
+          ],
+          inclinationRad: Math.PI / 2,
+          response: 'cross',
+        },
+      ),
+      'engine/no-signal',
+    );
   });
 
   it('a band above everything the samples carry', () => {
@@ -55,15 +70,41 @@ describe('what stops a claim', () => {
     stopped(snr({ noise }), 'engine/curve-invalid');
   });
 
+  it('a record of a few samples, and an overlap of records that share no time', () => {
+    const axis = Float64Array.from({ length: 4000 }, (_, i) => i / 4096);
+    const burst = axis.map((t) => 1e-21 * Math.exp(-(((t - 0.5) / 0.03) ** 2)) * Math.cos(2 * Math.PI * 120 * t));
+    const near = columns('P', axis, burst, null);
+    const far = columns(
+      'Q',
+      axis.map((t) => t + 3e6),
+      burst,
+      null,
+    );
+    stopped(
+      measured({ quantity: 'snr', a: columns('R', axis.subarray(0, 9), burst.subarray(2000, 2009), null), settings: { fLowHz: 20 } }),
+      'engine/too-few-points',
+    );
+    stopped(measured({ quantity: 'overlap', a: near, b: far, settings: { fLowHz: 20 } }), 'engine/records-far-apart');
+    const match = measured({ quantity: 'match', a: near, b: far, settings: { fLowHz: 20 } }).points[0]!;
+    expect(match.value!).toAgreeWith(1, 1e-9);
+    expect(match.components!['timeShiftS']!).toAgreeWith(-3e6, 1e-6);
+  });
+
   it('maximising over the polarisation of one response, or over the inclination of columns', () => {
-    stopped(measured({ quantity: 'match', a, b: a, settings: { totalMassMsun: 150, maximise: ['time', 'polarisation'] } }), 'engine/polarisation-needs-complex');
+    stopped(
+      measured({ quantity: 'match', a, b: a, settings: { totalMassMsun: 150, maximise: ['time', 'polarisation'] } }),
+      'engine/polarisation-needs-complex',
+    );
   });
 });
 
 describe('what is said beside a number', () => {
   it('modes below m = 0 that were made up need an answer (V14)', () => {
     const { content, ...rest } = a;
-    const half = inMasses('H', rest.axis, content.kind === 'modes' ? content.modes.filter((m) => m.m > 0) : [], { uniformStep: rest.uniformStep, negativeM: null });
+    const half = inMasses('H', rest.axis, content.kind === 'modes' ? content.modes.filter((m) => m.m > 0) : [], {
+      uniformStep: rest.uniformStep,
+      negativeM: null,
+    });
     const m = snr({ a: half });
     expect(codes(m)).toContain('engine/negative-m-assumed needs-answer');
     expect(m.assumed).toContain('negativeM');
@@ -79,7 +120,12 @@ describe('what is said beside a number', () => {
     const least = Number(/smallest mass whose signal fills the band is (\S+) M☉/.exec(text)![1]);
     expect(codes(snr({}, { totalMassMsun: least * 1.02 }))).not.toContain('engine/signal-starts-in-band worth-a-look');
     expect(snr({}, { totalMassMsun: least * 1.02 }).points[0]!.remarks).toBeUndefined();
-    const match = measured({ quantity: 'match', a, b: binary('B', { chi1z: 0.1, chi2z: 0.1 }), settings: { totalMassMsun: 20, fLowHz: 20 } });
+    const match = measured({
+      quantity: 'match',
+      a,
+      b: binary('B', { chi1z: 0.1, chi2z: 0.1 }),
+      settings: { totalMassMsun: 20, fLowHz: 20 },
+    });
     expect(codes(match)).toContain('engine/signal-starts-in-band needs-answer');
     expect(match.points[0]!.value).toBeGreaterThan(0);
   });
@@ -93,19 +139,52 @@ describe('what is said beside a number', () => {
   });
 
   it('listed modes that the file does not have', () => {
-    expect(codes(snr({}, { modes: [[2, 2], [5, 5]] }))).toContain('engine/modes-missing worth-a-look');
+    expect(
+      codes(
+        snr(
+          {},
+          {
+            modes: [
+              [2, 2],
+              [5, 5],
+            ],
+          },
+        ),
+      ),
+    ).toContain('engine/modes-missing worth-a-look');
   });
 });
 
 describe('what is assumed', () => {
   it('is what could change the value, and nothing else', () => {
-    expect(snr().assumed).toEqual(['massFrame', 'fHighHz', 'inclinationRad', 'azimuthRad', 'response', 'modes', 'average', 'detectors', 'armAngleDeg', 'taper']);
+    expect(snr().assumed).toEqual([
+      'massFrame',
+      'fHighHz',
+      'inclinationRad',
+      'azimuthRad',
+      'response',
+      'modes',
+      'average',
+      'detectors',
+      'armAngleDeg',
+      'taper',
+    ]);
     const axis = Float64Array.from({ length: 4000 }, (_, i) => i / 4096);
     const burst = axis.map((t) => 1e-21 * Math.exp(-(((t - 0.5) / 0.03) ** 2)) * Math.cos(2 * Math.PI * 120 * t));
-    const quiet = columns('P', axis, burst, burst.map((x) => -x));
+    const quiet = columns(
+      'P',
+      axis,
+      burst,
+      burst.map((x) => -x),
+    );
     const match = measured({ quantity: 'match', a: quiet, b: quiet, settings: { fLowHz: 20 } });
     expect(match.assumed).toEqual(['fHighHz', 'maximise', 'response']);
-    const declared = measured({ quantity: 'match', a: quiet, b: quiet, settings: { fLowHz: 20, fHighHz: 900, maximise: ['time'], response: 'plus' } });
+    const declared = measured({
+      quantity: 'match',
+      a: quiet,
+      b: quiet,
+      settings: { fLowHz: 20, fHighHz: 900, maximise: ['time'], response: 'plus' },
+    });
     expect(declared.assumed).toEqual([]);
   });
 
@@ -113,8 +192,18 @@ describe('what is assumed', () => {
     const { settings: used } = snr();
     expect(used.find(({ name }) => name === 'fLowHz')).toEqual({ name: 'fLowHz', value: 20, standing: 'declared', unit: 'Hz' });
     expect(used.find(({ name }) => name === 'response')).toEqual({ name: 'response', value: 'plus', standing: 'assumed' });
-    const swept = measured({ quantity: 'snr', a, settings: { distanceMpc: 500, fLowHz: 20 }, over: { setting: 'totalMassMsun', values: [100, 200] } });
-    expect(swept.settings.find(({ name }) => name === 'totalMassMsun')).toEqual({ name: 'totalMassMsun', value: { from: 100, to: 200 }, standing: 'swept', unit: 'M☉' });
+    const swept = measured({
+      quantity: 'snr',
+      a,
+      settings: { distanceMpc: 500, fLowHz: 20 },
+      over: { setting: 'totalMassMsun', values: [100, 200] },
+    });
+    expect(swept.settings.find(({ name }) => name === 'totalMassMsun')).toEqual({
+      name: 'totalMassMsun',
+      value: { from: 100, to: 200 },
+      standing: 'swept',
+      unit: 'M☉',
+    });
   });
 
   it('includes the lower edge when the curve gives it', () => {
@@ -158,7 +247,14 @@ describe('the error budget', () => {
 describe('a sweep', () => {
   const values = Array.from({ length: 14 }, (_, i) => 100 + 10 * i);
   const claimed = values.map((_, i) => (i === 9 ? 1 : null));
-  const m = measured({ quantity: 'snr', a, settings: { distanceMpc: 500, fLowHz: 20 }, over: { setting: 'totalMassMsun', values }, claimed, withFigures: true });
+  const m = measured({
+    quantity: 'snr',
+    a,
+    settings: { distanceMpc: 500, fLowHz: 20 },
+    over: { setting: 'totalMassMsun', values },
+    claimed,
+    withFigures: true,
+  });
 
   it('runs route B at both ends, at the worst point and eight between', () => {
     expect(m.routeBPoints).toContain(0);
@@ -181,15 +277,19 @@ describe('a sweep', () => {
   });
 
   it('gives the same bytes every time', () => {
-    const again = measured({ quantity: 'snr', a, settings: { distanceMpc: 500, fLowHz: 20 }, over: { setting: 'totalMassMsun', values }, claimed, withFigures: true });
+    const again = measured({
+      quantity: 'snr',
+      a,
+      settings: { distanceMpc: 500, fLowHz: 20 },
+      over: { setting: 'totalMassMsun', values },
+      claimed,
+      withFigures: true,
+    });
     expect(JSON.stringify(again)).toBe(JSON.stringify(m));
   });
 
   it('stops when it is told to', () => {
-    expect(() => measuredCancelled()).toThrow('cancelled');
+    const request = { claimId: 'C', inputs: { of: { a }, noise: curve('G2') }, settings, over: null, claimed: [], withFigures: false };
+    expect(() => quantities.get('snr')!.measure(request, { onProgress: () => undefined, cancelled: () => true })).toThrow('cancelled');
   });
 });
-
-import { quantities } from '@/lib/engine/quantities/registry';
-const measuredCancelled = () =>
-  quantities.get('snr')!.measure({ claimId: 'C', inputs: { of: { a }, noise: curve('G2') }, settings, over: null, claimed: [], withFigures: false }, { onProgress: () => undefined, cancelled: () => true });

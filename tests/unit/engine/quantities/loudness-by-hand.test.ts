@@ -4,7 +4,10 @@ import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic'
 import { taperWeightAt, measureTaper } from '@/lib/engine/conditioning/taper-window';
 import { binary, curve, measured, valueOf } from '../../../support/detector-claims';
 
-const modes22 = [[2, 2], [2, -2]] as const;
+const modes22 = [
+  [2, 2],
+  [2, -2],
+] as const;
 const at = { totalMassMsun: 120, distanceMpc: 700, fLowHz: 25, fHighHz: 400 } as const;
 const a = binary('A');
 const snr = (settings = {}): number => valueOf({ quantity: 'snr', a, settings: { ...at, ...settings } });

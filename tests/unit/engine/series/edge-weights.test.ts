@@ -48,7 +48,11 @@ describe('weights of a tapered record', () => {
   const taper = (t: number) => (t < 13.7 ? ramp(t / 13.7) : t > 80.3 ? ramp((100.4 - t) / 20.1) : 1);
   const g = (t: number) => Math.cos(0.11 * t + 0.3);
   /** Midpoints between the kinks, fine enough for 1e-11. */
-  const exact = [[0, 13.7], [13.7, 80.3], [80.3, 100.4]].reduce((sum, [from, to]) => {
+  const exact = [
+    [0, 13.7],
+    [13.7, 80.3],
+    [80.3, 100.4],
+  ].reduce((sum, [from, to]) => {
     const n = 400000;
     const h = (to! - from!) / n;
     for (let i = 0; i < n; i++) sum += h * taper(from! + (i + 0.5) * h) * g(from! + (i + 0.5) * h);
@@ -71,7 +75,11 @@ describe('local interpolation', () => {
 
   it('follows a wave of 25 samples a cycle on uneven steps to 5e-8', () => {
     const wave = (t: number) => [Math.cos((2 * Math.PI * t) / 25), Math.sin((2 * Math.PI * t) / 25)] as const;
-    const [re, im] = interpolatePair({ axis: uneven, first: uneven.map((t) => wave(t)[0]), second: uneven.map((t) => wave(t)[1]) }, grid, 8);
+    const [re, im] = interpolatePair(
+      { axis: uneven, first: uneven.map((t) => wave(t)[0]), second: uneven.map((t) => wave(t)[1]) },
+      grid,
+      8,
+    );
     for (let k = 0; k < grid.n; k += 13) {
       const [c, s] = wave(grid.t0 + k * grid.dt);
       expect(re[k]).toAgreeWith(c, 5e-8);
