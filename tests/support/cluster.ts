@@ -1,12 +1,12 @@
 import { randomBytes } from 'node:crypto';
-import { chmodSync, mkdtempSync, rmSync } from 'node:fs';
+import { chmodSync, mkdtempSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { TestProject } from 'vitest/node';
 import { migrateDatabase } from '@/lib/tools/database/migrate-database';
 import { ROLES, type RoleUrls } from '@/lib/tools/database/roles';
-import { roleUrl, startPostgres, type RunningPostgres } from '@/lib/tools/setup/postgres.mjs';
+import { roleUrl, startPostgres, stopPostgresIn, type RunningPostgres } from '@/lib/tools/setup/postgres.mjs';
 
 /** What a test file needs to clone the template: addresses are built from these. */
 export interface ClusterAddress {
@@ -20,6 +20,9 @@ declare module 'vitest' {
     cluster: ClusterAddress;
   }
 }
+
+const PREFIX = 'counterfoil-test-';
+const OWNER = 'owner.pid';
 
 export const TEMPLATE = 'counterfoil_template';
 
@@ -44,7 +47,9 @@ export default async function setup(project: TestProject): Promise<() => Promise
 }
 
 async function start(): Promise<Started> {
-  const folder = mkdtempSync(path.join(tmpdir(), 'counterfoil-test-'));
+  sweepLeftBehind();
+  const folder = mkdtempSync(path.join(tmpdir(), PREFIX));
+  writeFileSync(path.join(folder, OWNER), String(process.pid));
   chmodSync(folder, 0o711); // started by root, the server's own user has to pass through
   const password = randomBytes(18).toString('base64url');
   const postgres = await startPostgres({ folder, password, firstPort: 55100, fast: true });
@@ -57,6 +62,26 @@ async function start(): Promise<Started> {
     throw error;
   }
   return { address, postgres, folder };
+}
+
+/** A run that was killed could not stop its cluster; the next one does. */
+function sweepLeftBehind(): void {
+  for (const name of readdirSync(tmpdir()).filter((entry) => entry.startsWith(PREFIX))) {
+    const folder = path.join(tmpdir(), name);
+    if (!isOrphan(folder)) continue;
+    stopPostgresIn(folder);
+    rmSync(folder, { recursive: true, force: true });
+  }
+}
+
+/** Its maker is known and dead; a folder without that note, or another user's, is left alone. */
+function isOrphan(folder: string): boolean {
+  try {
+    process.kill(Number(readFileSync(path.join(folder, OWNER), 'utf8')), 0);
+    return false;
+  } catch (error) {
+    return (error as NodeJS.ErrnoException).code === 'ESRCH';
+  }
 }
 
 async function leave(): Promise<void> {

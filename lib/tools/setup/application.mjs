@@ -31,7 +31,13 @@ async function startFakes(supervisor, ports, env) {
 
 /** With a team's own PostgreSQL, object store and mail server; starts the parts whose role is given. */
 export async function startForTeam(supervisor) {
-  const env = { ...process.env, NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1', DEMO: '0' };
+  const env = {
+    ...process.env,
+    NODE_ENV: 'production',
+    NEXT_TELEMETRY_DISABLED: '1',
+    DEMO: '0',
+    AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: 'true',
+  };
   if (!env.APP_URL)
     throw new SetupError('DATABASE_URL is set, so this is no demonstration: set APP_URL too (README.md, "Running it for a team").');
   if (env.OWNER_DATABASE_URL) await runStep(process.execPath, ['--import', 'tsx', 'lib/tools/migrate.ts'], { env });

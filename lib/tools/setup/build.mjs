@@ -9,6 +9,10 @@ const INPUTS = [
   'app', 'lib', 'db', 'content', 'public', 'package-lock.json', 'tsconfig.json', 'tsconfig.build.json', 'next.config.ts', 'tailwind.config.ts',
   'postcss.config.mjs', 'proxy.ts', 'instrumentation.ts', 'instrumentation-node.ts',
 ]; // prettier-ignore
+/** Below the inputs, but no part of the web: a change there leaves the build as it is. */
+const APART = ['lib/tools', 'lib/worker', 'lib/signer', 'content/decisions', 'content/changelog.md', 'content/bench.md'];
+/** The one tool that the web loads. */
+const NEEDED = 'lib/tools/process.ts';
 const BUILT = path.join(ROOT, '.next');
 const STAMP = path.join(BUILT, 'INPUTS');
 
@@ -45,13 +49,13 @@ const buildEnvironment = () => ({
 
 function digestOfInputs() {
   const hash = createHash('sha256').update(process.versions.node);
-  for (const input of INPUTS) addToHash(hash, path.join(ROOT, input));
+  for (const input of [...INPUTS, NEEDED]) addToHash(hash, path.join(ROOT, input));
   return hash.digest('hex');
 }
 
 function addToHash(hash, file) {
   const stat = fs.statSync(file, { throwIfNoEntry: false });
-  if (!stat) return;
+  if (!stat || APART.includes(path.relative(ROOT, file))) return;
   if (stat.isDirectory()) for (const name of fs.readdirSync(file).sort()) addToHash(hash, path.join(file, name));
   else
     hash

@@ -9,3 +9,4 @@ export interface RunningPostgres {
 export function ensurePostgres(): unknown;
 export function startPostgres(options: { folder: string; password: string; firstPort?: number; fast?: boolean }): Promise<RunningPostgres>;
 export function roleUrl(role: string, password: string, port: number, database: string): string;
+export function stopPostgresIn(folder: string): void;

@@ -131,6 +131,16 @@ function isUp(data) {
 
 const logOf = (data) => path.join(data, 'server.log');
 const pidFileOf = (data) => fs.readFileSync(path.join(data, 'postmaster.pid'), 'utf8').split('\n');
+/** Stops whatever server runs in a folder that `startPostgres` was given, by a process that is gone. */
+export function stopPostgresIn(folder) {
+  for (const version of fs.readdirSync(folder).filter((name) => fs.existsSync(path.join(folder, name, 'postmaster.pid')))) {
+    const data = path.join(folder, version);
+    const owner = userName(fs.statSync(data).uid);
+    const control = (...args) => runAs(owner, `${PROGRAMS}/${version}/bin/pg_ctl`, ['-D', data, ...args]);
+    stop(control, data);
+  }
+}
+
 const tail = (file) => (fs.existsSync(file) ? fs.readFileSync(file, 'utf8').slice(-2000) : '(empty)');
 
 function stop(control, data) {
