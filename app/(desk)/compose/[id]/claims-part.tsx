@@ -1,13 +1,13 @@
 'use client';
 import { useState } from 'react';
 import { useFieldArray } from 'react-hook-form';
-import { toast } from 'sonner';
 import { Button } from '@/app/_ui/primitives/button';
 import { TextareaField } from '@/app/_ui/primitives/control';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { Table } from '@/app/_ui/primitives/table';
+import { say } from '@/app/_ui/primitives/toaster';
 import type { VerdictWord } from '@/lib/pipeline/result';
 import type { QuantityRow } from './quantity-row';
 import { emptyClaim, type ClaimFields } from './claim-fields';
@@ -32,7 +32,7 @@ export function ClaimsPart({ form, catalogue, verdicts }: ClaimsPartProps) {
   const remove = (index: number) => {
     const gone = form.getValues(`claims.${index}`);
     rows.remove(index);
-    toast(`Claim ${gone.id} is removed.`, { action: { label: 'Undo', onClick: () => rows.insert(index, gone) } });
+    say(`Claim ${gone.id} is removed.`, () => rows.insert(index, gone));
   };
   return (
     <div className="grid gap-4">

@@ -7,11 +7,11 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useRouter } from 'next/navigation';
 import { useCallback, useEffect, useMemo, useRef, type ReactNode } from 'react';
 import { useForm, type FieldPath } from 'react-hook-form';
-import { toast } from 'sonner';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { OfflineStrap } from '@/app/_ui/primitives/offline-strap';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { Button } from '@/app/_ui/primitives/button';
+import { say } from '@/app/_ui/primitives/toaster';
 import type { AuthorView, DraftSheet, FileView } from '@/lib/services/submissions/submission-view';
 import { CheckPart, isRunning } from './check-part';
 import type { CheckSummary } from './check-summary';
@@ -63,7 +63,7 @@ function useComposer({ id, version, sheet, check }: ComposerProps) {
   const set = useCallback((field: string, value: string) => form.setValue(field as FieldPath<ComposerFields>, value as never, { shouldDirty: true, shouldTouch: true, shouldValidate: true }), [form]);
   const applyFix = useCallback((fix: Fix) => {
     set(fix.field, fix.value);
-    toast(`${fix.words}. Check again to see what it changes.`);
+    say(`${fix.words}. Check again to see what it changes.`);
   }, [set]);
   const go = useCallback((field: string) => {
     if (field.includes('.settings.') && form.getValues(field as FieldPath<ComposerFields>) === undefined) set(field, '');

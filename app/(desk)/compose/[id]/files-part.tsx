@@ -1,12 +1,12 @@
 'use client';
 import { useRouter } from 'next/navigation';
 import { useRef, useState, type DragEvent } from 'react';
-import { toast } from 'sonner';
 import { Plot } from '@/app/_ui/charts/plot';
 import { Button } from '@/app/_ui/primitives/button';
 import { Hash } from '@/app/_ui/primitives/facts';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { ProgressList, type ProgressStep } from '@/app/_ui/primitives/progress';
+import { say } from '@/app/_ui/primitives/toaster';
 import type { FileView } from '@/lib/services/submissions/submission-view';
 import { loadSheet, removeFile } from '../actions';
 import { previewFile, type Preview } from './preview-table';
@@ -53,7 +53,7 @@ function useUploads({ id, version, settle }: FilesPartProps) {
     const removed = await removeFile({ id, name }).catch(() => null);
     if (!removed?.ok) return setTrouble([removed ? removed.error.sentence : `${name} could not be removed; try again.`]);
     const file = kept.current.get(name);
-    toast(`${name} is removed.`, file ? { action: { label: 'Undo', onClick: () => void sendOne(file, name).then(() => router.refresh()) } } : undefined);
+    say(`${name} is removed.`, file ? () => void sendOne(file, name).then(() => router.refresh()) : undefined);
     router.refresh();
   };
 

@@ -1,9 +1,9 @@
 'use client';
 import { useFieldArray } from 'react-hook-form';
-import { toast } from 'sonner';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import { Segmented } from '@/app/_ui/primitives/segmented';
+import { say } from '@/app/_ui/primitives/toaster';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { emptyNoise } from './fields';
 import { errorAt } from './form-error';
@@ -16,7 +16,7 @@ export function NoisePart({ form, files }: { readonly form: ComposerForm; readon
   const remove = (index: number) => {
     const gone = form.getValues(`noise.${index}`);
     rows.remove(index);
-    toast(`Noise curve ${gone.name} is removed.`, { action: { label: 'Undo', onClick: () => rows.insert(index, gone) } });
+    say(`Noise curve ${gone.name} is removed.`, () => rows.insert(index, gone));
   };
   return (
     <div className="grid gap-4">

@@ -1,11 +1,11 @@
 'use client';
 import type { UseFormReturn } from 'react-hook-form';
 import { useFieldArray } from 'react-hook-form';
-import { toast } from 'sonner';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
+import { say } from '@/app/_ui/primitives/toaster';
 import { emptyWaveform, type ComposerFields } from './fields';
 import { errorAt } from './form-error';
 
@@ -41,7 +41,7 @@ export function WaveformsPart({ form, files }: { readonly form: ComposerForm; re
   const remove = (index: number) => {
     const gone = form.getValues(`waveforms.${index}`);
     rows.remove(index);
-    toast(`Waveform ${gone.name} is removed.`, { action: { label: 'Undo', onClick: () => rows.insert(index, gone) } });
+    say(`Waveform ${gone.name} is removed.`, () => rows.insert(index, gone));
   };
   return (
     <div className="grid gap-4">
