@@ -6,7 +6,7 @@ import type { DetectorPoint, PointRequest } from '@/lib/engine/conditioning/dete
 import type { MeasuredPoint, Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled, notComputable, type MeasureRequest, type Quantity, type Watch } from '@/lib/engine/contract/quantity';
 import type { SettingName } from '@/lib/engine/contract/settings';
-import { noHorizon, startsInBand } from '@/lib/engine/findings/detector-findings';
+import { startsInBand } from '@/lib/engine/findings/detector-findings';
 import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { routeB } from '@/lib/engine/routes/b/route-b';

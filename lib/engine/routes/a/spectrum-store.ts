@@ -8,6 +8,8 @@ import { timeSource, type TimeSource } from './time-source';
 
 /** Spectra of one waveform that are kept: a mass-free search needs few, a search over the template's mass many once. */
 const MOST_SPECTRA = 40;
+/** Bins kept for one waveform: with what is derived from them about 250 MB. Noise with lines can ask for a million bins a spectrum. */
+const MOST_BINS = 1 << 22;
 
 interface Shelf {
   time?: TimeSource;
@@ -66,7 +68,13 @@ export class SpectrumStore {
     const known = spectra.get(key);
     if (known) return known;
     const made = make();
-    if (spectra.size >= MOST_SPECTRA) spectra.delete(spectra.keys().next().value!);
+    let bins = made.zRe.length;
+    for (const kept of spectra.values()) bins += kept.zRe.length;
+    for (const [oldest, { zRe }] of spectra) {
+      if (spectra.size < MOST_SPECTRA && bins <= MOST_BINS) break;
+      spectra.delete(oldest);
+      bins -= zRe.length;
+    }
     spectra.set(key, made);
     return made;
   }
