@@ -78,7 +78,15 @@ function interpolateFine(axis: Float64Array, s: ComplexSeries, grid: UniformGrid
   return { re, im };
 }
 
-function onBins(axis: Float64Array, s: ComplexSeries, dF: number, first: number, last: number, order: number, power: number): ComplexSeries {
+function onBins(
+  axis: Float64Array,
+  s: ComplexSeries,
+  dF: number,
+  first: number,
+  last: number,
+  order: number,
+  power: number,
+): ComplexSeries {
   const grid = { t0: first * dF, dt: dF, n: last - first + 1 };
   const { re, im } = isFinelySampled(s) ? interpolateFine(axis, s, grid, order) : interpolateThroughPolar(axis, s, polarOf(s), grid, order);
   const out = zeros(last + 1);

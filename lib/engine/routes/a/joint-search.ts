@@ -30,7 +30,11 @@ export interface Searched {
 export function searchedIn(request: MatchRequest): Searched {
   const has = (what: 'inclination' | 'templateMass' | 'phase'): boolean => request.maximise.includes(what);
   const modes = request.b.waveform.content.kind === 'modes';
-  return { mass: has('templateMass'), inclination: has('inclination') && modes, azimuth: request.response === 'complex' && has('phase') && modes };
+  return {
+    mass: has('templateMass'),
+    inclination: has('inclination') && modes,
+    azimuth: request.response === 'complex' && has('phase') && modes,
+  };
 }
 
 const MASS_RATIO = 1.02;
@@ -81,7 +85,10 @@ export class JointSearch {
     const sides = [request.a, b] as const;
     const longest = searched.mass ? { longestS: this.longestS() } : {};
     const prepared = prepare({ sides, band: request.band, absoluteTimes: !request.maximise.includes('time'), ...longest }, store, numerics);
-    const bank = searched.inclination || searched.azimuth ? modeBank(b, prepared.dF[1]!, request.band.fHighHz * b.secondsPerUnit, store, numerics) : null;
+    const bank =
+      searched.inclination || searched.azimuth
+        ? modeBank(b, prepared.dF[1]!, request.band.fHighHz * b.secondsPerUnit, store, numerics)
+        : null;
     this.slice = { factor, sides, prepared, bank };
     return this.slice;
   }
@@ -96,7 +103,10 @@ export class JointSearch {
     const { prepared, sides, bank } = this.sliceAt(placement.massFactor);
     const { weights, spectra, lagStride } = prepared;
     const last = weights.first + weights.values.length - 1;
-    const b = bank === null ? spectra[1]! : lineSpectrum(bank, placement.inclinationRad, sides[1].azimuthRad + placement.azimuthShiftRad, weights.first, last);
+    const b =
+      bank === null
+        ? spectra[1]!
+        : lineSpectrum(bank, placement.inclinationRad, sides[1].azimuthRad + placement.azimuthShiftRad, weights.first, last);
     return { a: spectra[0]!, b, weights, lagStride, secondsPerUnit: sides.map((side) => side.secondsPerUnit) };
   }
 
@@ -110,7 +120,9 @@ export class JointSearch {
   private starts(): Placement[] {
     const { request, searched } = this;
     const masses = searched.mass ? massGrid(request.templateMassRange) : [1];
-    const inclinations = searched.inclination ? Array.from({ length: INCLINATIONS }, (_, i) => (i * Math.PI) / (INCLINATIONS - 1)) : [request.b.inclinationRad];
+    const inclinations = searched.inclination
+      ? Array.from({ length: INCLINATIONS }, (_, i) => (i * Math.PI) / (INCLINATIONS - 1))
+      : [request.b.inclinationRad];
     const azimuths = searched.azimuth ? Array.from({ length: AZIMUTHS }, (_, i) => (i * 2 * Math.PI) / AZIMUTHS) : [0];
     const found: { placement: Placement; value: number }[] = [];
     for (const massFactor of masses) {
@@ -121,7 +133,10 @@ export class JointSearch {
         }
       }
     }
-    return found.sort((p, q) => q.value - p.value).slice(0, KEPT_STARTS).map((entry) => entry.placement);
+    return found
+      .sort((p, q) => q.value - p.value)
+      .slice(0, KEPT_STARTS)
+      .map((entry) => entry.placement);
   }
 
   private refined(start: Placement): { placement: Placement; value: number } {

@@ -17,7 +17,11 @@ export type ModeBank = readonly BankedMode[];
 export function modeBank(side: Side, dF: number, fTop: number, store: SpectrumStore, numerics: Numerics): ModeBank {
   const { content } = side.waveform;
   if (content.kind !== 'modes') return [];
-  return content.modes.map(({ l, m }, index) => ({ l, m, spectrum: sideSpectrum(side, { kind: 'mode', index }, dF, fTop, store, numerics) }));
+  return content.modes.map(({ l, m }, index) => ({
+    l,
+    m,
+    spectrum: sideSpectrum(side, { kind: 'mode', index }, dF, fTop, store, numerics),
+  }));
 }
 
 function addMode(sum: Spectrum, mode: Spectrum, re: number, im: number, from: number, to: number): void {
@@ -43,7 +47,13 @@ function addMode(sum: Spectrum, mode: Spectrum, re: number, im: number, from: nu
 export function lineSpectrum(bank: ModeBank, inclinationRad: number, azimuthRad: number, from: number, to: number): Spectrum {
   const first = bank[0]!.spectrum;
   const n = first.zRe.length;
-  const sum: Spectrum = { ...first, zRe: new Float64Array(n), zIm: new Float64Array(n), yRe: new Float64Array(n), yIm: new Float64Array(n) };
+  const sum: Spectrum = {
+    ...first,
+    zRe: new Float64Array(n),
+    zIm: new Float64Array(n),
+    yRe: new Float64Array(n),
+    yIm: new Float64Array(n),
+  };
   for (const { l, m, spectrum } of bank) {
     const y = spinWeightedHarmonic(l, m, inclinationRad, azimuthRad);
     if (y.re !== 0 || y.im !== 0) addMode(sum, spectrum, y.re, y.im, from, to);

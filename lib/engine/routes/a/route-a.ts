@@ -55,7 +55,8 @@ function outcomeOf(request: MatchRequest, store: SpectrumStore, numerics: Numeri
   const { pair, alignment, placement, onBound } = new JointSearch(request, searched, store, numerics).run();
   const { norms } = alignment;
   const scales = [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] as const;
-  const mismatch = norms[0] > 0 && norms[1] > 0 ? residualSum(pair, request.response, scales, alignment.x, alignment.turnRad) / 2 : Number.NaN;
+  const mismatch =
+    norms[0] > 0 && norms[1] > 0 ? residualSum(pair, request.response, scales, alignment.x, alignment.turnRad) / 2 : Number.NaN;
   return {
     // Below ½ the residual is the sharper of the two and keeps the match at most 1.
     match: mismatch < 0.5 ? 1 - mismatch : alignment.value,
@@ -71,7 +72,11 @@ function residualPower(request: MatchRequest, at: MatchOutcome, store: SpectrumS
   const search = new JointSearch(request, searchedIn(request), store, numerics);
   const massFactor = at.massFactor ?? 1;
   const modes = request.b.waveform.content.kind === 'modes' && request.response === 'complex';
-  const placement = { massFactor, inclinationRad: at.inclinationRad ?? request.b.inclinationRad, azimuthShiftRad: modes ? at.phaseShiftRad : 0 };
+  const placement = {
+    massFactor,
+    inclinationRad: at.inclinationRad ?? request.b.inclinationRad,
+    azimuthShiftRad: modes ? at.phaseShiftRad : 0,
+  };
   const pair: Pair = search.pairAt(placement);
   const b = at.massFactor === undefined ? request.b : request.rescale(request.b, massFactor);
   const x = xOfShift(pair, at.timeShiftS);
@@ -90,7 +95,13 @@ function modePower(side: Side, band: Band, store: SpectrumStore, numerics: Numer
 }
 
 /** Many lines of sight at one mass: the modes are transformed once and summed bin by bin. */
-function grams(side: Side, band: Band, sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[], store: SpectrumStore, numerics: Numerics): ResponseGram[] {
+function grams(
+  side: Side,
+  band: Band,
+  sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[],
+  store: SpectrumStore,
+  numerics: Numerics,
+): ResponseGram[] {
   const prepared: Prepared = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics);
   const bank = modeBank(side, prepared.dF[0]!, band.fHighHz * side.secondsPerUnit, store, numerics);
   const { weights } = prepared;

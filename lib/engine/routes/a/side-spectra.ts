@@ -7,9 +7,12 @@ import { spectrumOf, type Spectrum } from './spectrum';
 import { taperKey, type SpectrumStore } from './spectrum-store';
 
 /** Line of sight, or one mode alone by its place in the list. */
-export type Content = { readonly kind: 'line'; readonly inclinationRad: number; readonly azimuthRad: number } | { readonly kind: 'mode'; readonly index: number };
+export type Content =
+  | { readonly kind: 'line'; readonly inclinationRad: number; readonly azimuthRad: number }
+  | { readonly kind: 'mode'; readonly index: number };
 
-const contentKey = (content: Content): string => (content.kind === 'line' ? `${content.inclinationRad},${content.azimuthRad}` : `mode ${content.index}`);
+const contentKey = (content: Content): string =>
+  content.kind === 'line' ? `${content.inclinationRad},${content.azimuthRad}` : `mode ${content.index}`;
 
 /** An open end without a ramp is a jump: its tail is only summed well on a finer grid. */
 const HALVINGS_FOR_JUMPS = 2;
@@ -18,7 +21,10 @@ const hasJump = (side: Side, store: SpectrumStore): boolean => {
   if (waveform.domain === 'frequency') return false;
   const source = store.time(waveform);
   const last = source.axis.length - 1;
-  const parts = waveform.content.kind === 'modes' ? waveform.content.modes : [{ re: waveform.content.plus, im: waveform.content.cross ?? waveform.content.plus }];
+  const parts =
+    waveform.content.kind === 'modes'
+      ? waveform.content.modes
+      : [{ re: waveform.content.plus, im: waveform.content.cross ?? waveform.content.plus }];
   const sizeAt = (i: number): number => Math.max(0, ...parts.map((part) => Math.hypot(part.re[i]!, part.im[i]!)));
   const top = parts.reduce((most, part) => part.re.reduce((m, x) => Math.max(m, Math.abs(x)), most), 0);
   return (taper.start === null && sizeAt(0) > 1e-3 * top) || (taper.end === null && sizeAt(last) > 1e-3 * top);
@@ -46,11 +52,22 @@ function timeSpectrum(side: Side, content: Content, dF: number, store: SpectrumS
   return store.spectrum(side.waveform, key, () => {
     const order = numerics.interpolationOrder;
     const samples =
-      content.kind === 'line' ? source.lineOfSight(grid, order, content.inclinationRad, content.azimuthRad) : source.mode(grid, order, content.index);
+      content.kind === 'line'
+        ? source.lineOfSight(grid, order, content.inclinationRad, content.azimuthRad)
+        : source.mode(grid, order, content.index);
     const weights = windowWeights(grid, grid.tEnd, side.taper, numerics.edgeOrder);
     // Modes are added bin by bin later, so they count time from one common instant.
     const origin = content.kind === 'line' ? {} : { origin: Math.floor(grid.n / 2) };
-    return spectrumOf({ samples, grid, weights, dF, variable: side.waveform.variable, nyquist: source.nyquist, topShare: numerics.topShare, ...origin });
+    return spectrumOf({
+      samples,
+      grid,
+      weights,
+      dF,
+      variable: side.waveform.variable,
+      nyquist: source.nyquist,
+      topShare: numerics.topShare,
+      ...origin,
+    });
   });
 }
 
@@ -77,6 +94,8 @@ function frequencySpectrum(side: Side, content: Content, dF: number, fTop: numbe
  * Source: settings.md rules 2.1 to 2.4.
  */
 export const sideSpectrum = (side: Side, content: Content, dF: number, fTop: number, store: SpectrumStore, numerics: Numerics): Spectrum =>
-  side.waveform.domain === 'frequency' ? frequencySpectrum(side, content, dF, fTop, store, numerics) : timeSpectrum(side, content, dF, store, numerics);
+  side.waveform.domain === 'frequency'
+    ? frequencySpectrum(side, content, dF, fTop, store, numerics)
+    : timeSpectrum(side, content, dF, store, numerics);
 
 export const lineOf = (side: Side): Content => ({ kind: 'line', inclinationRad: side.inclinationRad, azimuthRad: side.azimuthRad });

@@ -13,7 +13,13 @@ import type { SpectrumStore } from './spectrum-store';
  * Fails:  never.
  * Source: ρ² = ∫ (4 f |h̃|²/S) d ln f.
  */
-export function weightedSpectrum(side: Side, band: Band, response: Response, fHz: readonly number[], store: SpectrumStore): (number | null)[] {
+export function weightedSpectrum(
+  side: Side,
+  band: Band,
+  response: Response,
+  fHz: readonly number[],
+  store: SpectrumStore,
+): (number | null)[] {
   const { spectra, dfHz } = prepare({ sides: [side], band, absoluteTimes: false }, store, houseNumerics);
   const { plus, minus } = channelsOf(spectra[0]!, response);
   const scale = side.strainPerUnit * side.secondsPerUnit;
