@@ -127,7 +127,6 @@ function pointStops(request: PointRequest): Finding[] {
         );
   const found = [
     ...waveformStops(request, point),
-    look.curveInvalid(request.noise),
     look.bandBeyondCurve(point),
     look.averageTwice(point),
     look.averageWithoutModes(point, c),
@@ -147,7 +146,9 @@ const distinct = (findings: readonly Finding[]): Finding[] => [
 
 /** What makes a claim impossible to compute, read off before any transform; one message for each cause. */
 export function stopsOf(_quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[]): Finding[] {
-  const all = distinct(requests.flatMap(pointStops));
+  // The curve is one for all points, and reading it takes as long as a spectrum.
+  const invalid = look.curveInvalid(requests[0]!.noise);
+  const all = invalid === null ? distinct(requests.flatMap(pointStops)) : [invalid];
   const seen = new Set<string>();
   return all.filter(({ code, where }) => !seen.has(`${code}|${where}`) && seen.add(`${code}|${where}`));
 }
