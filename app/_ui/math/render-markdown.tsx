@@ -49,11 +49,15 @@ export type FirstHeading = keyof typeof headings;
 const link = ({ href, children }: { readonly href?: string; readonly children?: ReactNode }) =>
   href?.startsWith('#') || (href?.startsWith('/') && !href.startsWith('//')) ? <a href={href}>{children}</a> : <a href={href} rel="nofollow noopener noreferrer ugc">{children}</a>;
 
+/** What may be wider than its column scrolls in a frame of its own, which the keyboard reaches. */
+const table = ({ children }: { readonly children?: ReactNode }) => <div className="overflow-x-auto" tabIndex={0} role="group" aria-label="Table"><table>{children}</table></div>;
+const pre = ({ children }: { readonly children?: ReactNode }) => <pre tabIndex={0} role="group" aria-label="Text as typed">{children}</pre>;
+
 /** Markdown with maths, from anyone: raw HTML is off, and sanitising comes before the formulas. */
 export function renderMarkdown(source: string, firstHeading: FirstHeading = 3): ReactNode {
   if (source.length > longestText) return <pre className="overflow-x-auto whitespace-pre-wrap">{source}</pre>;
   const tree = processor.runSync(processor.parse(source));
-  return toJsxRuntime(tree, { Fragment, jsx, jsxs, components: { ...headings[firstHeading], a: link } }) as ReactNode;
+  return toJsxRuntime(tree, { Fragment, jsx, jsxs, components: { ...headings[firstHeading], a: link, table, pre } }) as ReactNode;
 }
 
 export const Prose = ({ source, firstHeading }: { readonly source: string; readonly firstHeading?: FirstHeading }) => (
