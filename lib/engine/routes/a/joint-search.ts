@@ -27,6 +27,7 @@ export interface Searched {
   readonly azimuth: boolean;
 }
 
+/** Which of the template's own parameters a request leaves free; a phase is an azimuth where the response is complex and there are modes to turn. */
 export function searchedIn(request: MatchRequest): Searched {
   const has = (what: 'inclination' | 'templateMass' | 'phase'): boolean => request.maximise.includes(what);
   const modes = request.b.waveform.content.kind === 'modes';

@@ -14,6 +14,7 @@ interface BankedMode {
 /** The spectra of all modes of one side, from which any line of sight is a sum. */
 export type ModeBank = readonly BankedMode[];
 
+/** Transforms every mode of one side at bins of width dF (1/unit of the axis) up to fTop; empty for content along a line of sight. */
 export function modeBank(side: Side, dF: number, fTop: number, store: SpectrumStore, numerics: Numerics): ModeBank {
   const { content } = side.waveform;
   if (content.kind !== 'modes') return [];
