@@ -19,7 +19,8 @@ export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim 
   const points = measurement.points.flatMap((measured, i): Weighed[] => {
     const claimed = claim.claimed[i];
     if (!claimed) return [];
-    const { scale, naturalTolerance } = claim.quantity;
+    const { scale } = claim.quantity;
+    const naturalTolerance = (value: number): number => claim.quantity.naturalTolerance(value, claim.settings);
     const weighing = { claimed, measured, routeBRan: measurement.routeBPoints.includes(i), scale, declaredTolerance: claim.tolerance, naturalTolerance, stopped };
     return [{ claimed, measured, verdict: decideVerdict(weighing) }];
   });
