@@ -13,8 +13,8 @@ const everyone: readonly NavEntry[] = [
   { href: '/methods', label: 'Methods' },
 ];
 const members: readonly NavEntry[] = [
-  { href: '/submissions', label: 'Submissions' },
-  { href: '/desk', label: 'Desk' },
+  { href: '/submissions', label: 'Submissions', also: '/compose' },
+  { href: '/desk', label: 'Desk', also: '/review' },
 ];
 
 /** A link is only a convenience: who may open what is asked again behind every door. */

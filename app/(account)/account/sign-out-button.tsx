@@ -12,7 +12,7 @@ export function SignOutButton() {
     const answer = await askAuth('sign-out', {});
     if (answer.ok) {
       // A whole page load: what was fetched for a member must not linger.
-      window.location.href = '/';
+      window.location.assign('/');
     } else {
       setProblem(answer.sentence);
       setBusy(false);

@@ -4,6 +4,7 @@ import type { Route } from 'next';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
 import { formatDay } from '@/app/views/dates';
+import { quantityWords } from '@/app/views/quantity-word';
 import { loadFor } from '@/lib/http/page-guard';
 import { listOwnInvitations } from '@/lib/services/reviews/list-own-invitations';
 import type { OwnInvitationView } from '@/lib/services/reviews/invitation-view';
@@ -17,7 +18,7 @@ function Asked({ invitation }: { readonly invitation: OwnInvitationView }) {
   return (
     <StackedRow>
       <HeadCell><Link className={titleLook} href={`/desk/invitations/${invitation.id}` as Route}>{invitation.title}</Link><p className="text-small text-ink-2">{invitation.authors.join(', ')}</p></HeadCell>
-      <Cell>{invitation.quantities.join(', ') || 'not computed yet'}</Cell>
+      <Cell>{quantityWords(invitation.quantities) || 'not computed yet'}</Cell>
       <Cell>by {formatDay(invitation.answerBy)}</Cell>
       <Cell last><LinkButton href={`/desk/invitations/${invitation.id}`} size="low" tone="main">Answer<span className="sr-only">: {invitation.title}</span></LinkButton></Cell>
     </StackedRow>
@@ -28,7 +29,7 @@ function Reviewing({ invitation }: { readonly invitation: OwnInvitationView }) {
   return (
     <StackedRow>
       <HeadCell><Link className={titleLook} href={`/review/${invitation.submissionId}` as Route}>{invitation.title}</Link><p className="text-small text-ink-2">{invitation.authors.join(', ')}</p></HeadCell>
-      <Cell>{invitation.quantities.join(', ')}</Cell>
+      <Cell>{quantityWords(invitation.quantities) || 'not computed yet'}</Cell>
       <Cell>{invitation.stateWords}</Cell>
       <Cell last><LinkButton href={`/review/${invitation.submissionId}`} size="low">Open<span className="sr-only">: {invitation.title}</span></LinkButton></Cell>
     </StackedRow>

@@ -1,7 +1,8 @@
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import { Icon } from '@/app/_ui/primitives/icon';
-import { quantityWord, verdictChoices } from './filter-words';
+import { quantityWord } from '@/app/views/quantity-word';
+import { verdictChoices } from './filter-words';
 import type { Filter } from './register-filter';
 
 /** A plain form that asks by its address: it needs no script and can be bookmarked. */

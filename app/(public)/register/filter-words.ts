@@ -1,5 +1,3 @@
-import { quantities } from '@/lib/engine/quantities/registry';
-
 export const verdictChoices = [
   { value: 'agrees', label: 'agrees' },
   { value: 'differs', label: 'differs' },
@@ -9,6 +7,3 @@ export const verdictChoices = [
 ] as const;
 
 export const verdictWord = (verdict: string): string => verdictChoices.find((choice) => choice.value === verdict)?.label ?? verdict;
-
-/** A quantity of an older or newer engine is still named, by its id. */
-export const quantityWord = (id: string): string => quantities.get(id)?.title ?? id.replaceAll('-', ' ').replace(/^./, (c) => c.toUpperCase());

@@ -5,7 +5,8 @@ import { RemovableTag } from '@/app/_ui/primitives/tag';
 import { loadForAnyone } from '@/lib/http/page-guard';
 import { listRecords } from '@/lib/services/records/list-records';
 import { FilterForm } from './filter-form';
-import { quantityWord, verdictWord } from './filter-words';
+import { quantityWord } from '@/app/views/quantity-word';
+import { verdictWord } from './filter-words';
 import { isFiltered, parseFilter, registerHref, type Filter, type SearchParams } from './register-filter';
 import { RegisterTable } from './register-table';
 

@@ -6,7 +6,7 @@ import { formatDay } from '@/app/views/dates';
 import { RECORD_STANDING_WORDS } from '@/lib/badges/standing';
 import { isVerdict } from '@/lib/services/records/register-words';
 import type { RegisterRow } from '@/lib/services/records/record-view';
-import { quantityWord } from './filter-words';
+import { quantityWord } from '@/app/views/quantity-word';
 
 const asState = (verdict: string): VerdictState => (isVerdict(verdict) ? verdict : 'waiting');
 

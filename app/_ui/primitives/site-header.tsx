@@ -11,6 +11,7 @@ import { Icon } from './icon';
 export interface NavEntry {
   readonly href: string;
   readonly label: string;
+  readonly also?: string;
   /** Things that wait there, said in the link's name. */
   readonly count?: number;
 }
@@ -36,7 +37,7 @@ export function SiteHeader({ nav, person, signInHref, theme, end }: SiteHeaderPr
           </Link>
           <nav aria-label="Main" className="ml-2 flex gap-1 text-ui max-stack:order-3 max-stack:-mx-3 max-stack:w-[calc(100%+24px)] max-stack:overflow-x-auto">
             {nav.map((entry) => (
-              <NavLink key={entry.href} href={entry.href}>
+              <NavLink key={entry.href} href={entry.href} also={entry.also}>
                 {entry.label}
                 {entry.count ? <span className="ml-1.5 rounded border border-hair-2 px-1 text-micro text-ink-2">{entry.count}<span className="sr-only"> waiting</span></span> : null}
               </NavLink>

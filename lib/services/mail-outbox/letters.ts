@@ -1,4 +1,6 @@
 import { RULES_SENTENCE } from '@/lib/badges/cautions';
+import { quantities } from '@/lib/engine/quantities/registry';
+import { settingsTable } from '@/lib/engine/quantities/settings-table';
 import type { LetterNumber, LetterPoint } from '@/lib/reviews/letter';
 
 /** The texts that go out. Plain text, no picture and no link but to the desk: a letter tells its reader nothing about anybody else. */
@@ -57,10 +59,12 @@ export interface DecisionLetterFacts {
 
 /** Enough digits to read beside the claim; the record page has them all. */
 const shown = (value: number | null): string => (value === null ? 'not computable' : Number(value.toPrecision(6)).toString());
-const place = (at: Readonly<Record<string, number>>): string => Object.entries(at).map(([name, value]) => ` at ${name} ${value}`).join(',');
+const unitOf = (name: string): string => (settingsTable as ReadonlyMap<string, { readonly unit: string }>).get(name)?.unit ?? '';
+const place = (at: Readonly<Record<string, number>>): string =>
+  Object.entries(at).map(([name, value]) => (unitOf(name) === '' ? ` at ${name} ${value}` : ` at ${value} ${unitOf(name)}`)).join(',');
 
 const numberLine = (n: LetterNumber): string =>
-  `  ${n.claim}, ${n.quantity}${place(n.at)}: claimed ${n.claimed}, recomputed ${shown(n.recomputed)}, U = ${shown(n.expandedUncertainty)}${n.unit === '' ? '' : ` (${n.unit})`}: ${n.verdict.replaceAll('-', ' ')}`;
+  `  ${n.claim}, ${quantities.get(n.quantity)?.title ?? n.quantity}${place(n.at)}: claimed ${n.claimed}, recomputed ${shown(n.recomputed)}, U = ${shown(n.expandedUncertainty)}${n.unit === '' ? '' : ` (${n.unit})`}: ${n.verdict.replaceAll('-', ' ')}`;
 const pointLine = (p: LetterPoint): string => `  ${p.kind.replaceAll('-', ' ')}, on ${p.anchor.claim}${place(p.anchor.at ?? {})}: ${p.text}`;
 const section = (head: string, lines: readonly string[]): string => (lines.length === 0 ? '' : [head, ...lines].join('\n'));
 

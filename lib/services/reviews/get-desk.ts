@@ -1,6 +1,6 @@
 import type { Reader } from '@/db/client';
 import { listDecisions } from '@/db/reads/decisions/decisions';
-import { findSlot } from '@/db/reads/reviews/invitations';
+import { findAssignment, findSlot } from '@/db/reads/reviews/invitations';
 import { getSubmissionHead } from '@/db/reads/submissions/submission-head';
 import { ok } from '@/lib/kernel/result';
 import type { SubmissionAction } from '@/lib/policy/actions';
@@ -52,7 +52,7 @@ export function getDesk(actor: Actor, submissionId: string): Promise<Outcome<Des
         openThread: scene.result !== null && can('review.open-thread'),
         report: !handedIn && can('review.report'),
         noteToEditor: can('review.note-to-editor'),
-        takeTriage: can('review.take'),
+        takeTriage: can('review.take') && !(await holds(reader, actor, submissionId)),
         invite: can('review.invite'),
         sendToReview: can('review.begin'),
         beginDeciding: can('review.call-for-decision'),
@@ -67,6 +67,11 @@ async function whoReads(reader: Reader, actor: Actor, facts: SubmissionFacts): P
   if (facts.authorship) return { role: facts.authorship, name };
   const slot = isSignedIn(actor) ? await findSlot(reader, facts.submissionId, actor.userId) : undefined;
   return slot === undefined ? { role: 'editor', name } : { role: 'referee', name: pseudonym(slot) };
+}
+
+/** Whoever holds it has nothing to take. */
+async function holds(reader: Reader, actor: Actor, submissionId: string): Promise<boolean> {
+  return isSignedIn(actor) && (await findAssignment(reader, submissionId))?.editorId === actor.userId;
 }
 
 async function dueOf(reader: Reader, facts: SubmissionFacts, userId: string): Promise<string | null> {

@@ -75,7 +75,7 @@ describe('every response carries the security headers', () => {
         page.on('console', (message) => ['error', 'warning'].includes(message.type()) && complaints.push(message.text()));
         page.on('pageerror', (error) => complaints.push(error.message));
         const response = await page.goto(url, { timeout: 90_000 });
-        await page.waitForLoadState('load', { timeout: 90_000 });
+        await page.waitForLoadState('networkidle', { timeout: 90_000 });
         expect(response?.status()).toBe(200);
         expect(complaints).toEqual([]);
         await page.close();

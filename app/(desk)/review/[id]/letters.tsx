@@ -5,6 +5,7 @@ import { VerdictChip } from '@/app/_ui/verdict/verdict-chip';
 import type { VerdictState } from '@/app/_ui/verdict/verdict-words';
 import { formatDay } from '@/app/views/dates';
 import { placeText } from '@/app/views/place-text';
+import { quantityWord } from '@/app/views/quantity-word';
 import { DECISION_WORDS } from '@/lib/reviews/decision';
 import type { LetterNumber } from '@/lib/reviews/letter';
 import type { DecisionView } from '@/lib/services/reviews/decision-view';
@@ -39,7 +40,7 @@ export function LetterNumbers({ numbers }: { readonly numbers: readonly LetterNu
       <tbody>
         {numbers.map((n, i) => (
           <tr key={i}>
-            <th scope="row">{n.claim} {n.quantity}{placeText(n.at) && `, ${placeText(n.at)}`}</th>
+            <th scope="row">{n.claim} {quantityWord(n.quantity)}{placeText(n.at) && `, ${placeText(n.at)}`}</th>
             <td className="whitespace-nowrap">{n.claimed} {n.unit}</td>
             <td className="whitespace-nowrap">{formatWithUncertainty(n.recomputed, n.expandedUncertainty, n.unit)}</td>
             <td><VerdictChip state={n.verdict as VerdictState} bare /></td>

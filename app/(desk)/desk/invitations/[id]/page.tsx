@@ -3,6 +3,7 @@ import { notFound } from 'next/navigation';
 import { Facts } from '@/app/_ui/primitives/facts';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { formatDay } from '@/app/views/dates';
+import { quantityWords } from '@/app/views/quantity-word';
 import { loadFor } from '@/lib/http/page-guard';
 import { listOwnInvitations } from '@/lib/services/reviews/list-own-invitations';
 import { AnswerForm } from './answer-form';
@@ -18,7 +19,7 @@ export default async function Invitation({ params }: { readonly params: Promise<
       <div className="mx-auto grid max-w-[720px] gap-6">
         <p className="text-ui text-ink-2">You are asked to referee</p>
         <h1>{invitation.title}</h1>
-        <Facts facts={[['Authors', invitation.authors.join(', ')], ['Quantities', invitation.quantities.join(', ') || 'not computed yet'], ['Editor', invitation.editor], ['Asked', formatDay(invitation.invitedAt)], ['Answer by', formatDay(invitation.answerBy)]]} />
+        <Facts facts={[['Authors', invitation.authors.join(', ')], ['Quantities', quantityWords(invitation.quantities) || 'not computed yet'], ['Editor', invitation.editor], ['Asked', formatDay(invitation.invitedAt)], ['Answer by', formatDay(invitation.answerBy)]]} />
         {invitation.state === 'asked' ? (
           <AnswerForm id={invitation.id} />
         ) : (
