@@ -4,14 +4,20 @@ import type { Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled, notComputable, type QuantityInputs, type Watch } from '@/lib/engine/contract/quantity';
 import { duplicateFindings, type Inputs } from './read-inputs';
 
+export interface Extent {
+  readonly withFigures: boolean;
+  /** A first look by one route; see `MeasureRequest`. */
+  readonly routeAOnly?: boolean;
+}
+
 /** One claim through the workshop: stopped by what its inputs show, or measured. */
-export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, withFigures: boolean, watch: Watch): Measurement {
+export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, extent: Extent, watch: Watch): Measurement {
   const points = (claim.over?.values ?? [null]).map((value) => (claim.over && value !== null ? { [claim.over.setting]: value } : {}));
   const found = inputFindings(claim, sheet, inputs);
   const resolved = resolve(claim, inputs);
   const stopped = found.some((finding) => finding.level === 'stops-lodging');
   if (stopped || resolved === null) return notComputable(found, points);
-  const measurement = measureOrStop(claim, resolved, withFigures, watch, points);
+  const measurement = measureOrStop(claim, resolved, extent, watch, points);
   return { ...measurement, findings: distinct([...found, ...measurement.findings]) };
 }
 
@@ -31,10 +37,10 @@ function resolve(claim: Claim, inputs: Inputs): QuantityInputs | null {
 }
 
 /** A defect of one quantity must not take the other claims with it: it fails closed and says so. */
-function measureOrStop(claim: Claim, inputs: QuantityInputs, withFigures: boolean, watch: Watch, points: readonly Readonly<Record<string, number>>[]): Measurement {
+function measureOrStop(claim: Claim, inputs: QuantityInputs, extent: Extent, watch: Watch, points: readonly Readonly<Record<string, number>>[]): Measurement {
   const claimed = claim.claimed.map((entry) => (entry.kind === 'value' ? entry.value : null));
   try {
-    const measurement = claim.quantity.measure({ claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, withFigures }, watch);
+    const measurement = claim.quantity.measure({ claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent }, watch);
     if (measurement.points.length === points.length) return measurement;
     return notComputable([defect(claim, `it gave ${measurement.points.length} values for ${points.length} points`)], points);
   } catch (thrown) {

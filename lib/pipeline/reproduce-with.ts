@@ -69,7 +69,7 @@ function measureAll(sheet: ClaimSheet, inputs: Inputs, options: ReproduceOptions
     const base = readingShare + i * share;
     const onProgress = (fraction: number, doing: string) => options.onProgress(base + share * Math.min(1, Math.max(0, fraction)), `${claim.id}: ${doing}`);
     onProgress(0, claim.quantity.title);
-    const measurement = measureClaim(claim, sheet, inputs, options.withFigures, { onProgress, cancelled: options.cancelled });
+    const measurement = measureClaim(claim, sheet, inputs, { withFigures: options.withFigures }, { onProgress, cancelled: options.cancelled });
     if (options.withFigures) figures[claim.id] = measurement.figures;
     return weighClaim(claim, measurement);
   });

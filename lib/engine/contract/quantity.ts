@@ -20,6 +20,8 @@ export interface MeasureRequest {
   readonly claimed: readonly (number | null)[];
   /** Figures cost time; the command line with --json does not ask for them. */
   readonly withFigures: boolean;
+  /** A first look: route A alone, no error bar and no budget; nothing may be concluded from it. */
+  readonly routeAOnly?: boolean;
 }
 
 /** How a long measurement tells what it does and is told to stop; pure, injected. */

@@ -58,6 +58,23 @@ function findingsOf(request: MeasureRequest, completed: CompletedModes, point: P
   ];
 }
 
+/** Route A's values alone: what was not estimated is null. */
+function looked(request: MeasureRequest, watch: Watch, completed: CompletedModes, points: readonly PreparedPoint[], ats: readonly At[]): Measurement {
+  const step = stepper(watch, points.length);
+  const store = fluxStore();
+  const found: EnergyAtPoint[] = [];
+  for (const { record, settings } of points) {
+    step('route A');
+    const a = energyByRouteA(record, settings, store);
+    if (a === null) return notComputable([noStart(completed.waveform.name)], ats);
+    found.push(a);
+  }
+  const findings = findingsOf(request, completed, points[0]!, found[0]!, store);
+  if (findings.some(({ level }) => level === 'stops-lodging')) return notComputable(findings, ats);
+  const measured = points.map(({ at, norm }, i): MeasuredPoint => ({ at, value: found[i]!.energy / norm, routes: { A: found[i]!.energy / norm, B: null }, expandedUncertainty: null }));
+  return { points: measured, budget: [], findings, assumed: [], settings: [], routeBPoints: [], figures: [] };
+}
+
 function measurePoints(request: MeasureRequest, watch: Watch, completed: CompletedModes, points: readonly PreparedPoint[], ats: readonly At[]): Measurement {
   const { name, significantDigits: digits } = completed.waveform;
   const step = stepper(watch, points.length + Math.min(points.length, 11) + 1);
@@ -109,5 +126,6 @@ export function measureEnergy(request: MeasureRequest, watch: Watch): Measuremen
   const prepared = ats.map(preparerOf(completed.waveform, request));
   const stops = prepared.filter((entry): entry is Finding => 'code' in entry);
   if (stops.length > 0) return notComputable(unique(stops), ats);
-  return measurePoints(request, watch, completed, prepared.filter((entry): entry is PreparedPoint => 'record' in entry), ats);
+  const measure = request.routeAOnly ? looked : measurePoints;
+  return measure(request, watch, completed, prepared.filter((entry): entry is PreparedPoint => 'record' in entry), ats);
 }

@@ -99,7 +99,13 @@ export function measureDetector(quantity: DetectorQuantity, request: MeasureRequ
   const found = all.map((i) => byA.get(i)!);
   const late = valueStops(quantity, walk, found);
   if (late.length > 0) return notComputable([...late, ...findingsOf(quantity, requests, found)], ats);
-  return weighed(walk, found, watch);
+  return request.routeAOnly ? lookedAt(walk, found) : weighed(walk, found, watch);
+}
+
+/** Route A's values alone: what was not estimated is null. */
+function lookedAt({ quantity, requests }: Walk, found: readonly Evaluated[]): Measurement {
+  const points = found.map(({ value }, i): MeasuredPoint => ({ at: requests[i]!.at, value: finiteOrNull(value), routes: { A: finiteOrNull(value), B: null }, expandedUncertainty: null }));
+  return { points, budget: [], findings: findingsOf(quantity, requests, found), assumed: [], settings: [], routeBPoints: [], figures: [] };
 }
 
 function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measurement {
