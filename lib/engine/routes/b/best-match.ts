@@ -37,7 +37,8 @@ function prepare(request: MatchRequest, sourceOf: SourceOf, knobs: RouteBKnobs):
   const source = sourceOf(a);
   const factors = freedom.mass ? templateMassRange : [1];
   const extremes = factors.map((factor) => sourceOf(factor === 1 ? b : rescale(b, factor)));
-  const apart = freedom.time ? 0 : Math.max(...extremes.map((other) => Math.abs(source.centreS - other.centreS)));
+  // A free shift reaches as far as the records overlap at all; what b leaves behind then lies the sum of their lengths away, and must not leak in.
+  const apart = Math.max(...extremes.map((other) => (freedom.time ? Math.min(source.spanS, other.spanS) : Math.abs(source.centreS - other.centreS))));
   const allModes = freedom.azimuth || freedom.inclination;
   const nodes = nodesFor([source, ...extremes], band, knobs, { allModes, extraLagS: apart });
   const channels = channelsOf(source.line(a.inclinationRad, a.azimuthRad, nodes.f), response);

@@ -5,7 +5,7 @@ import type { RouteBKnobs, Source } from './spectrum';
 export interface NodeWishes {
   /** Read every mode of each source, not only its line of sight. */
   readonly allModes?: boolean;
-  /** Lag in s between records that no shift will remove. */
+  /** Lag in s beyond the longest record: between records that no shift removes, or that a free shift opens. */
   readonly extraLagS?: number;
 }
 

@@ -45,8 +45,8 @@ describe.each([
     const [a, b] = [record(aAt, 80, aLoud), record(bAt, 82, bLoud)];
     const [byA, byB] = [match(routeA, a, b, psd), match(routeB, a, b, psd)];
     expect(byA.timeShiftS).toAgreeWith(aAt - bAt, 1e-3);
-    expect(byA.timeShiftS).toAgreeWith(byB.timeShiftS, 1e-5);
-    expect(byA.match).toAgreeWith(byB.match, 1e-4);
+    expect(byA.timeShiftS).toAgreeWith(byB.timeShiftS, 1e-9);
+    expect(byA.match).toAgreeWith(byB.match, 1e-8);
     expect(byA.match).toBeGreaterThan(0.85);
   });
 });
