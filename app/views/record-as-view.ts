@@ -7,6 +7,7 @@ import type { ReportView as HandedIn } from '@/lib/services/reviews/report-view'
 import type { LodgedView } from '@/lib/services/submissions/submission-view';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
+import { logsOf } from './run-log';
 import { headingsOfResult, noSheet } from './sheet-headings';
 
 /** What was signed, in the shape of a result: the page shows the record's own numbers and no others. */
@@ -67,7 +68,7 @@ export function recordAsView(record: PublishedRecord, lodged: LodgedView | null)
     result: resultOf(document),
     figures: {},
     figuresHref: lodged?.run ? figuresHref(record.submissionId, lodged.run.id) : null,
-    logs: {},
+    logs: logsOf(lodged?.run ?? null, document.claims),
     statement: lodged?.revision.statement || null,
     decision: decisionOf(record),
     reports: record.reports.map(reportAsView),

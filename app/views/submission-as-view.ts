@@ -4,6 +4,7 @@ import { formatProblem } from '@/lib/kernel/problem';
 import type { DraftView, LodgedView, RunView } from '@/lib/services/submissions/submission-view';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
+import { logsOf } from './run-log';
 import { headingsOfResult, headingsOfSheet } from './sheet-headings';
 
 /** How a run stands, in the component's words. */
@@ -48,7 +49,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     result,
     figures: extra.figures ?? {},
     figuresHref: run?.state === 'measured' ? figuresHref(submission.id, run.id) : null,
-    logs: {},
+    logs: logsOf(run, result?.claims ?? []),
     statement: revision.statement || null,
     decision: null,
     reports: extra.reports ?? [],

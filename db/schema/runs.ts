@@ -47,6 +47,12 @@ export const runs = pgTable(
   ],
 );
 
+/** One new activity of a run, and when it began, counted from the run's own start. */
+export interface RunStep {
+  readonly atMs: number;
+  readonly doing: string;
+}
+
 export const RUN_OUTCOMES = ['measured', 'refused'] as const;
 export type RunOutcome = (typeof RUN_OUTCOMES)[number];
 
@@ -67,6 +73,8 @@ export const runResults = pgTable(
     figures: json('figures').$type<FiguresByClaim>(),
     resultDigest: text('result_digest'),
     problems: json('problems').$type<readonly Problem[]>().notNull().default([]),
+    /** What the run did and when: beside the result, never part of it. */
+    log: json('log').$type<readonly RunStep[]>().notNull().default([]),
     finishedAt: moment('finished_at').notNull().defaultNow(),
   },
   (t) => [

@@ -9,7 +9,7 @@ export function RunLog({ view, claimId }: { readonly view: RecordView; readonly 
   if (!log && !sha && !view.engine) return null;
   return (
     <Part title="Run log">
-      {log && <pre tabIndex={0} role="group" aria-label={`Run log of ${claimId}`} className="overflow-x-auto whitespace-pre-wrap text-ink-2">{log}</pre>}
+      {log && <pre tabIndex={0} role="group" aria-label={`Run log of ${claimId}`} className="overflow-x-auto whitespace-pre font-mono text-small text-ink-2">{log}</pre>}
       {view.engine && <p className="text-ui text-ink-2">Engine {view.engine}{view.run.state === 'done' && view.run.finishedOn ? `, ${view.run.finishedOn}` : ''}</p>}
       {sha && <p><Hash value={sha} name="result sha256" /></p>}
     </Part>

@@ -20,6 +20,7 @@ const columns = {
   result: runResults.result,
   resultDigest: runResults.resultDigest,
   problems: runResults.problems,
+  log: runResults.log,
   finishedAt: runResults.finishedAt,
 };
 

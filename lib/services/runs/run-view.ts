@@ -6,7 +6,7 @@ export function viewRun(row: RunRow): RunView {
   const head = { id: row.id, kind: row.kind, engine: row.engine, requestedAt: row.requestedAt.toISOString() };
   if (row.outcome !== null && row.finishedAt !== null) {
     const finishedAt = row.finishedAt.toISOString();
-    if (row.result !== null && row.resultDigest !== null) return { ...head, state: 'measured', finishedAt, result: row.result, resultDigest: row.resultDigest };
+    if (row.result !== null && row.resultDigest !== null) return { ...head, state: 'measured', finishedAt, result: row.result, resultDigest: row.resultDigest, log: row.log ?? [] };
     return { ...head, state: 'refused', finishedAt, problems: row.problems ?? [] };
   }
   if (row.state === 'stopped') return { ...head, state: 'stopped', because: row.stoppedBecause ?? 'The run was given up.' };

@@ -46,7 +46,7 @@ export type RunView = {
   | { readonly state: 'stopped'; readonly because: string }
   /** The sheet or a file could not be read; every problem is listed. */
   | { readonly state: 'refused'; readonly finishedAt: string; readonly problems: readonly Problem[] }
-  | { readonly state: 'measured'; readonly finishedAt: string; readonly result: ResultDocument; readonly resultDigest: string }
+  | { readonly state: 'measured'; readonly finishedAt: string; readonly result: ResultDocument; readonly resultDigest: string; readonly log: readonly { readonly atMs: number; readonly doing: string }[] }
 );
 
 /** One numbered edition with its own computation. */

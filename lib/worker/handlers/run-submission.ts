@@ -11,6 +11,7 @@ import type { ComputeSheet } from '../compute';
 import { fetchInputs } from '../fetch-inputs';
 import { makeRunFolder } from '../run-folder';
 import { progressTeller } from '../progress-teller';
+import { stepLog } from '../step-log';
 import type { Handler, HandlerRoom } from './handler';
 
 type RunInputs = NonNullable<Awaited<ReturnType<typeof findRunInputs>>>;
@@ -39,18 +40,20 @@ export const runSubmission: Handler = async (raw, room, attempt) => {
 };
 
 async function compute(room: HandlerRoom, run: RunInputs, folder: string): Promise<RunFinding> {
+  const log = stepLog(() => performance.now());
+  log.note('fetching the files');
   const files = await fetchInputs(room.store, run.inputs, folder);
   const teller = progressTeller(room.database, { runId: run.id, submissionId: run.submissionId });
   try {
-    const done = await room.compute({ sheet: run.sheet, files, withFigures: true }, { onProgress: teller.note, signal: room.signal });
-    return asFinding(done);
+    const done = await room.compute({ sheet: run.sheet, files, withFigures: true }, { onProgress: (fraction, doing) => (log.note(doing), teller.note(fraction, doing)), signal: room.signal });
+    return asFinding(done, log.steps());
   } finally {
     await teller.stop();
   }
 }
 
-function asFinding(done: Awaited<ReturnType<ComputeSheet>>): RunFinding {
-  if (!done.ok) return { outcome: 'refused', engine: ENGINE_VERSION, problems: done.error };
+function asFinding(done: Awaited<ReturnType<ComputeSheet>>, log: RunFinding['log']): RunFinding {
+  if (!done.ok) return { outcome: 'refused', engine: ENGINE_VERSION, problems: done.error, log };
   const { result, figures } = done.value;
-  return { outcome: 'measured', engine: result.engine, result, figures, resultDigest: digestOf(result) };
+  return { outcome: 'measured', engine: result.engine, result, figures, resultDigest: digestOf(result), log };
 }

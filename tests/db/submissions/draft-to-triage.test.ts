@@ -70,6 +70,17 @@ describe('from draft to triage', () => {
     expect(Object.keys(must(await getFigures(author, id, check.run.id)).figures)).toEqual(['C1']);
   });
 
+  it('keeps what the run did, in order and with the time of each step, beside the result', async () => {
+    const { check } = must(await getDraft(author, id));
+    if (check?.run.state !== 'measured') throw new Error('there is no measured run');
+    const { log } = check.run;
+    expect(log[0]?.doing).toBe('fetching the files');
+    expect(log.at(-1)?.doing).toBe('done');
+    expect(log.some((step) => step.doing.startsWith('C1: '))).toBe(true);
+    expect(log.map((step) => step.atMs)).toEqual(log.map((step) => step.atMs).toSorted((a, b) => a - b));
+    expect(JSON.stringify(check.run.result)).not.toContain('atMs');
+  });
+
   it('a change of prose leaves the check standing, a change of a setting or a file does not', async () => {
     const { revision } = must(await getDraft(author, id));
     const { version } = must(await updateDraft(author, id, { version: revision.version, statement: 'Other words.' }));

@@ -1,0 +1,1 @@
+ALTER TABLE "run_results" ADD COLUMN "log" json DEFAULT '[]'::json NOT NULL;
