@@ -1,10 +1,11 @@
-import { integer, json, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
+import { index, integer, json, pgTable, primaryKey, text, uuid } from 'drizzle-orm/pg-core';
 import { users } from './accounts';
 import { moment } from './columns';
 
 /**
  * The answer that was given to one request carrying an Idempotency-Key, written in the transaction of
- * the act itself: the same key again gets the same answer and acts no second time. Append-only.
+ * the act itself: the same key again gets the same answer and acts no second time. Never changed, and
+ * removed only when it is older than a day, after which the key is free.
  */
 export const idempotencyKeys = pgTable(
   'idempotency_keys',
@@ -19,5 +20,5 @@ export const idempotencyKeys = pgTable(
     body: json('body').notNull(),
     createdAt: moment('created_at').notNull().defaultNow(),
   },
-  (t) => [primaryKey({ columns: [t.userId, t.key] })],
+  (t) => [primaryKey({ columns: [t.userId, t.key] }), index('idempotency_keys_created_idx').on(t.createdAt)],
 );

@@ -41,6 +41,12 @@ export const SUBMISSION_ACTIONS = {
     referee: [...underReview, ...published], editor: [...underReview, 'back-with-author', ...published], member: published,
   },
 
+  /** One's own reruns; asking for one and seeing it are open to the same people. */
+  'submission.view-variations': {
+    author: [...discussed, 'triage', ...published], 'co-author': [...discussed, 'triage', ...published],
+    referee: [...underReview, ...published], editor: [...underReview, 'back-with-author', ...published], member: published,
+  },
+
   /** An editor becomes the one who holds the submission. */
   'review.take': { editor: ['triage', 'in-review', 'deciding'] },
   'review.invite': { editor: ['triage', 'in-review'] },
@@ -77,6 +83,7 @@ export type SubmissionAction = keyof typeof SUBMISSION_ACTIONS;
 export const ACCOUNT_ACTIONS = {
   'register.read': ['visitor', 'member', 'editor', 'administrator'],
   'account.read-own': ['member', 'editor', 'administrator'],
+  'account.manage-tokens': ['member', 'editor', 'administrator'],
   'submission.create': ['member', 'editor', 'administrator'],
   'submission.list-own': ['member', 'editor', 'administrator'],
   'review.list-own': ['member', 'editor', 'administrator'],
