@@ -13,8 +13,25 @@ interface Series {
   readonly im: Float64Array;
 }
 
+interface Sighted {
+  readonly inclinationRad: number;
+  readonly azimuthRad: number;
+  readonly series: Series;
+}
+
+/** The last line of sight of each record: a sweep over masses looks along one. */
+const sighted = new WeakMap<UniformRecord, Sighted>();
+
 function lineOfSight(record: UniformRecord, isModes: boolean, inclinationRad: number, azimuthRad: number): Series {
   if (!isModes) return record.parts[0]!;
+  const known = sighted.get(record);
+  if (known?.inclinationRad === inclinationRad && known.azimuthRad === azimuthRad) return known.series;
+  const series = sumOfModes(record, inclinationRad, azimuthRad);
+  sighted.set(record, { inclinationRad, azimuthRad, series });
+  return series;
+}
+
+function sumOfModes(record: UniformRecord, inclinationRad: number, azimuthRad: number): Series {
   const re = new Float64Array(record.n);
   const im = new Float64Array(record.n);
   for (const part of record.parts) {
@@ -27,15 +44,9 @@ function lineOfSight(record: UniformRecord, isModes: boolean, inclinationRad: nu
   return { re, im };
 }
 
-function peakOf(series: Series): number {
-  let top = 0;
-  for (let i = 0; i < series.re.length; i++) top = Math.max(top, Math.abs(series.re[i]!), Math.abs(series.im[i]!));
-  return top;
-}
-
 /** Longest stride whose grid still carries frequencies up to `high` at four points a cycle. */
 function strideFor(series: Series, step: number, high: number, thinning: number): number {
-  let stride = resolvedStride(series.re, series.im, peakOf(series)) * thinning;
+  let stride = resolvedStride(series) * thinning;
   if (stride === thinning) stride = 1;
   while (stride > 1 && stride * step * high > 0.25) stride /= 2;
   return stride;
@@ -138,13 +149,6 @@ function seriesTransform(series: Series, record: UniformRecord, taper: TaperWind
   return spectrum;
 }
 
-function medianStep(axis: Float64Array, uniformStep: number | null): number {
-  if (uniformStep !== null) return uniformStep;
-  const steps = Float64Array.from({ length: axis.length - 1 }, (_, i) => axis[i + 1]! - axis[i]!).sort();
-  const middle = steps.length >> 1;
-  return steps.length % 2 === 1 ? steps[middle]! : (steps[middle - 1]! + steps[middle]!) / 2;
-}
-
 /** Nodes at which the record speaks; above its Nyquist frequency its content counts as zero. */
 function below(f: Float64Array, limit: number): Float64Array {
   const count = f.findIndex((x) => x > limit);
@@ -176,7 +180,7 @@ export function timeSource(side: Side, knobs: RouteBKnobs): Source {
   const span = (record.n - 1) * record.step;
   const order = derivativeOrder(side);
   const isModes = waveform.content.kind === 'modes';
-  const nyquistHz = 0.5 / medianStep(waveform.axis, waveform.uniformStep) / secondsPerUnit;
+  const nyquistHz = 0.5 / record.medianStep / secondsPerUnit;
   const transform = (series: Series, fHz: Float64Array): Spectrum => {
     const f = below(fHz, nyquistHz).map((x) => x * secondsPerUnit);
     const spectrum = seriesTransform(series, record, taper, f, knobs);

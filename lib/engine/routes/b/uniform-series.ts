@@ -14,6 +14,8 @@ export interface UniformRecord {
   readonly step: number;
   readonly n: number;
   readonly parts: readonly ComplexSeries[];
+  /** Of the file's own times: it sets the Nyquist frequency. */
+  readonly medianStep: number;
 }
 
 /** Above this many points the resampled record would not fit beside its spectrum in a worker's memory. */
@@ -34,6 +36,12 @@ function smallestStep(axis: Float64Array): number {
   return least;
 }
 
+function medianStepOf(axis: Float64Array): number {
+  const steps = Float64Array.from({ length: axis.length - 1 }, (_, i) => axis[i + 1]! - axis[i]!).sort();
+  const middle = steps.length >> 1;
+  return steps.length % 2 === 1 ? steps[middle]! : (steps[middle - 1]! + steps[middle]!) / 2;
+}
+
 function resample(waveform: Waveform): UniformRecord {
   const { axis } = waveform;
   const first = axis[0]!;
@@ -46,7 +54,7 @@ function resample(waveform: Waveform): UniformRecord {
     const [re, im] = evaluateSplines([fitSpline(basis, part.re), fitSpline(basis, part.im)], points);
     return { ...part, re: re!, im: im! };
   });
-  return { first, step, n, parts };
+  return { first, step, n, parts, medianStep: medianStepOf(axis) };
 }
 
 /**
@@ -63,7 +71,7 @@ export function uniformRecord(waveform: Waveform): UniformRecord {
   if (known) return known;
   const { axis, uniformStep } = waveform;
   const record =
-    uniformStep === null ? resample(waveform) : { first: axis[0]!, step: uniformStep, n: axis.length, parts: partsOf(waveform) };
+    uniformStep === null ? resample(waveform) : { first: axis[0]!, step: uniformStep, n: axis.length, parts: partsOf(waveform), medianStep: uniformStep };
   records.set(waveform, record);
   return record;
 }
@@ -71,6 +79,12 @@ export function uniformRecord(waveform: Waveform): UniformRecord {
 /** sin-like content of angle x a step survives an 8th difference as (2 sin x/2)⁸; this is x = 0.24. */
 const RESOLVED = 1.25e-5;
 const EIGHTH = [1, -8, 28, -56, 70, -56, 28, -8, 1];
+
+function peakOf(re: Float64Array, im: Float64Array): number {
+  let top = 0;
+  for (let i = 0; i < re.length; i++) top = Math.max(top, Math.abs(re[i]!), Math.abs(im[i]!));
+  return top;
+}
 
 function eighthDifferenceBelow(values: Float64Array, stride: number, bound: number): boolean {
   for (let i = 0; i + 8 * stride < values.length; i++) {
@@ -81,18 +95,25 @@ function eighthDifferenceBelow(values: Float64Array, stride: number, bound: numb
   return true;
 }
 
+/** A series' samples never change, and a sweep asks for the same one at every mass. */
+const strides = new WeakMap<Pick<ComplexSeries, 're' | 'im'>, number>();
+
 /**
  * The longest stride at which a degree-7 interpolant still resolves a series to about 1e-11.
- * Shape:  re, im parallel; returns a power of two, at least 1.
+ * Shape:  re, im parallel, and not changed afterwards; returns a power of two, at least 1.
  * Units:  samples.
  * Error:  content so small that its eighth difference hides below 1.25e-5 of the peak may be left out.
  * Fails:  never.
  * Source: our rule; checked by halving the stride in the tests.
  */
-export function resolvedStride(re: Float64Array, im: Float64Array, peak: number): number {
+export function resolvedStride(series: Pick<ComplexSeries, 're' | 'im'>): number {
+  const known = strides.get(series);
+  if (known !== undefined) return known;
+  const { re, im } = series;
   let stride = 1;
-  const bound = RESOLVED * peak;
+  const bound = RESOLVED * peakOf(re, im);
   const resolved = (s: number): boolean => 16 * s < re.length && eighthDifferenceBelow(re, s, bound) && eighthDifferenceBelow(im, s, bound);
   while (resolved(stride * 2)) stride *= 2;
+  strides.set(series, stride);
   return stride;
 }
