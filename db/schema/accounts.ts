@@ -1,5 +1,7 @@
-import { bigint, boolean, check, index, integer, pgTable, text, unique, uuid } from 'drizzle-orm/pg-core';
+import { sql } from 'drizzle-orm';
+import { bigint, boolean, check, index, integer, pgTable, primaryKey, text, unique, uuid } from 'drizzle-orm/pg-core';
 import { ACCOUNT_ROLES, type AccountRole } from '../../lib/policy/account-role';
+import { OPTIONAL_LETTERS, type OptionalLetter } from '../../lib/reviews/optional-letters';
 import { moment, oneOf, randomId } from './columns';
 
 /**
@@ -17,10 +19,14 @@ export const users = pgTable(
     image: text('image'),
     role: text('role').$type<AccountRole>().notNull().default('member'),
     affiliation: text('affiliation'),
+    /** An ORCID iD as its owner typed it; one that ORCID itself vouched for is a row of `accounts`. */
+    typedOrcid: text('typed_orcid'),
+    /** True once a code of the second factor was given; `two_factors` holds its secret. */
+    twoFactorEnabled: boolean('two_factor_enabled').notNull().default(false),
     createdAt: moment('created_at').notNull().defaultNow(),
     updatedAt: moment('updated_at').notNull().defaultNow(),
   },
-  () => [check('users_role_known', oneOf('role', ACCOUNT_ROLES))],
+  (t) => [check('users_role_known', oneOf('role', ACCOUNT_ROLES)), check('users_typed_orcid_form', sql`${t.typedOrcid} ~ '^\\d{4}-\\d{4}-\\d{4}-\\d{3}[\\dX]$'`)],
 );
 
 /**
@@ -91,3 +97,34 @@ export const rateLimits = pgTable('rate_limits', {
   count: integer('count').notNull(),
   lastRequest: bigint('last_request', { mode: 'number' }).notNull(),
 });
+
+/**
+ * The second factor of one person. Secret and recovery codes are encrypted under AUTH_SECRET; a
+ * recovery code is taken out when it is used. `verified` is false until the first code was given,
+ * and `locked_until` rests further tries after ten wrong ones in a row.
+ */
+export const twoFactors = pgTable('two_factors', {
+  id: randomId().primaryKey(),
+  userId: uuid('user_id')
+    .notNull()
+    .unique()
+    .references(() => users.id, { onDelete: 'cascade' }),
+  secret: text('secret').notNull(),
+  backupCodes: text('backup_codes').notNull(),
+  verified: boolean('verified').notNull().default(false),
+  failedVerificationCount: integer('failed_verification_count').notNull().default(0),
+  lockedUntil: moment('locked_until'),
+});
+
+/** A kind of letter that one person does not want. No row means it is sent; only kinds that may be left off can be here. */
+export const declinedLetters = pgTable(
+  'declined_letters',
+  {
+    userId: uuid('user_id')
+      .notNull()
+      .references(() => users.id, { onDelete: 'cascade' }),
+    letter: text('letter').$type<OptionalLetter>().notNull(),
+    since: moment('since').notNull().defaultNow(),
+  },
+  (t) => [primaryKey({ columns: [t.userId, t.letter] }), check('declined_letters_optional', oneOf('letter', OPTIONAL_LETTERS))],
+);

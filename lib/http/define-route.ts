@@ -8,6 +8,7 @@ import { webEnv } from '@/lib/env';
 import type { Result } from '@/lib/kernel/result';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
 import type { Door } from '@/lib/policy/doors';
+import { heldBack } from '@/lib/policy/grant';
 import { underKey } from '@/lib/services/once';
 import { judgeOrigin } from './origin';
 import { BAD_CREDENTIAL, FOREIGN_ORIGIN, problemResponse, reportDefect, type DoorError } from './problem-response';
@@ -83,16 +84,20 @@ async function readCall<P, Q, B, T>(spec: RouteSpec<P, Q, B, T>, request: Reques
 async function serve<P, Q, B, T>(spec: RouteSpec<P, Q, B, T>, call: Call<P, Q, B>): Promise<Response> {
   const key = call.request.headers.get('idempotency-key');
   const userId = userIdOf(call.actor);
-  if (!key || !userId || spec.respond || spec.body === 'stream') return answer(spec, await spec.handle(call));
+  if (!key || !userId || spec.respond || spec.body === 'stream') return answer(spec, explained(await spec.handle(call), call.actor));
   if (!/^[\x21-\x7e]{8,200}$/.test(key)) return problemResponse({ code: 'invalid', sentence: 'The Idempotency-Key is not 8 to 200 printable characters.' });
   const requestDigest = digestOf([spec.door, call.params, call.query, call.rawBody]);
   return (await replay(userId, key, requestDigest)) ?? actUnderKey(spec, call, { userId, key, requestDigest });
 }
 
+/** To an account that lacks something nearly all looks absent; it is told why, whatever it asked for. */
+const explained = <T>(outcome: Result<T, DoorError>, actor: Actor): Result<T, DoorError> =>
+  outcome.ok || outcome.error.code !== 'not-found' ? outcome : { ok: false, error: heldBack(actor) ?? outcome.error };
+
 async function actUnderKey<P, Q, B, T>(spec: RouteSpec<P, Q, B, T>, call: Call<P, Q, B>, once: { userId: string; key: string; requestDigest: string }): Promise<Response> {
   const describe = (value: unknown) => ({ status: spec.status ?? 200, body: value ?? null });
   try {
-    return answer(spec, await underKey({ ...once, answer: describe }, () => spec.handle(call)));
+    return answer(spec, await underKey({ ...once, answer: describe }, async () => explained(await spec.handle(call), call.actor)));
   } catch (cause) {
     // The twin of this request was quicker: its transaction stood, ours was undone.
     const kept = await replay(once.userId, once.key, once.requestDigest);

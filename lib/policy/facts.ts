@@ -1,4 +1,5 @@
 import { isSignedIn, type Actor } from './actor';
+import { lackIn } from './lack';
 import { isPublicState, type SubmissionState } from './submission-state';
 
 /**
@@ -25,7 +26,7 @@ export type Standing = (typeof STANDINGS)[number];
 
 export function standingsOf(actor: Actor, facts: SubmissionFacts): readonly Standing[] {
   if (actor.kind === 'worker') return ['worker'];
-  if (!isSignedIn(actor)) return ['visitor'];
+  if (!isSignedIn(actor) || lackIn(actor)) return ['visitor'];
   const own: Standing[] = [];
   if (facts.authorship) own.push(facts.authorship);
   else {

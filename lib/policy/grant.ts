@@ -2,7 +2,9 @@ import { err, ok, type Result } from '@/lib/kernel/result';
 import { accountRuleOf, ruleOf, type AccountAction, type SubmissionAction } from './actions';
 import { isSignedIn, type Actor } from './actor';
 import { isPublic, standingsOf, type SubmissionFacts } from './facts';
+import { LACK_SENTENCES, lackIn } from './lack';
 import { STATE_WORDS, type SubmissionState } from './submission-state';
+import { scopesFor } from './token-scopes';
 
 /** Proof that policy was asked. The constructor is not exported: nobody else can make one. */
 class MintedGrant<A extends string> {
@@ -34,17 +36,35 @@ const SIGNED_OUT: Denied = { code: 'signed-out', sentence: 'Nobody is signed in 
 export function may<A extends SubmissionAction>(action: A, actor: Actor, facts: SubmissionFacts | null): Result<SubmissionGrant<A>, Denied> {
   const reading = isReading(action);
   if (actor.kind === 'visitor' && !reading) return err(SIGNED_OUT);
-  if (facts === null) return err(NOT_FOUND);
+  // Before the facts, so that a token without the scope learns nothing of what exists.
+  const beyond = beyondScope(action, actor);
+  if (beyond) return err(beyond);
+  if (facts === null) return err(heldBack(actor) ?? NOT_FOUND);
   const standings = standingsOf(actor, facts);
   const allowed = standings.flatMap((standing) => ruleOf(action)[standing] ?? []);
   if (allowed.includes(facts.state) && hasSomethingToShow(action, facts))
     return ok(new MintedGrant(action, actor, facts.submissionId, [...new Set(allowed)], facts.state) as SubmissionGrant<A>);
-  if (reading || !maySee(actor, facts)) return err(NOT_FOUND);
+  if (heldBack(actor) || reading || !maySee(actor, facts)) return err(heldBack(actor) ?? NOT_FOUND);
   return err(refusal(allowed, facts.state));
 }
 
+/** Said to an account that lacks something, and in the same words whether or not what it asks for exists. */
+export function heldBack(actor: Actor): Denied | undefined {
+  const lack = lackIn(actor);
+  return lack && { code: 'denied', sentence: LACK_SENTENCES[lack] };
+}
+
+/** What a token was not made for; null when it was, or when the actor is none. */
+export function beyondScope(action: SubmissionAction | AccountAction, actor: Actor): Denied | null {
+  if (actor.kind !== 'token') return null;
+  const needed = scopesFor(action);
+  if (needed.some((scope) => actor.scopes.includes(scope))) return null;
+  if (needed.length === 0) return { code: 'denied', sentence: 'No token may do this. Sign in and do it on a page of this site.' };
+  return { code: 'denied', sentence: `This token was made for ${actor.scopes.join(', ')}; this needs ${needed.join(' or ')}. Make another token in your account.` };
+}
+
 /** Reviews and records are about a lodged revision, whatever the state says. */
-const NEEDS_LODGED = /^(review\.|record\.|submission\.(view-review|view-public|vary)$)/;
+const NEEDS_LODGED = /^(review\.|record\.|submission\.(view-review|view-public|view-variations|vary)$)/;
 const hasSomethingToShow = (action: SubmissionAction, facts: SubmissionFacts): boolean => facts.everLodged || !NEEDS_LODGED.test(action);
 
 const isReading = (action: SubmissionAction): boolean => action.includes('.view-') || action.includes('.read-') || action === 'review.see-identities';
@@ -67,9 +87,12 @@ function refusal(allowed: readonly SubmissionState[], state: SubmissionState): D
 
 /** May this actor do what concerns no one submission? */
 export function mayGenerally<A extends AccountAction>(action: A, actor: Actor): Result<Grant<A>, Denied> {
-  const standing = isSignedIn(actor) ? actor.accountRole : 'visitor';
+  const whole = isSignedIn(actor) && (!lackIn(actor) || action.startsWith('account.'));
+  const standing = whole ? actor.accountRole : 'visitor';
   const allowed = accountRuleOf(action);
+  const beyond = beyondScope(action, actor);
+  if (beyond) return err(beyond);
   if (actor.kind !== 'worker' && allowed.includes(standing)) return ok(new MintedGrant(action, actor, null, [], null));
   if (actor.kind === 'visitor') return err(SIGNED_OUT);
-  return err({ code: 'denied', sentence: 'Your account does not include this.' });
+  return err(heldBack(actor) ?? { code: 'denied', sentence: 'Your account does not include this.' });
 }

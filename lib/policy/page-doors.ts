@@ -16,6 +16,7 @@ export const PAGE_DOORS = {
   'page /forgotten-password': ['anyone'],
   'page /reset-password': ['anyone'],
   'page /account': ['account.read-own'],
+  'page /account/tokens': ['account.manage-tokens'],
   'page /compose': ['submission.create'],
   'page /compose/{id}': ['submission.view-draft'],
   'page /submissions': ['submission.list-own'],
