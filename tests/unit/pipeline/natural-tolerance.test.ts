@@ -35,7 +35,9 @@ async function weighed(routes: { A: number; B: number }, claimed: unknown, setti
   const catalogue = { ...smallCatalogue(), quantities: new Map([[quantity.id, quantity]]) };
   const outcome = await reproduceWith(catalogue, { sheetJson, openFile }, { withFigures: false, onProgress: () => undefined, cancelled: () => false, digest });
   if (!outcome.ok) throw new Error(outcome.error.map(formatProblem).join('\n'));
-  return outcome.value.result.claims[0]!.points[0]!;
+  const [point] = outcome.value.result.claims[0]?.points ?? [];
+  if (!point) throw new Error('no point');
+  return point;
 }
 
 describe('the natural tolerance of a distinguishability SNR', () => {
