@@ -33,6 +33,11 @@ export interface RegisterRow {
   readonly revision: number;
   readonly level: number;
   readonly standing: RecordStanding;
+  /** ISO 8601, UTC. */
+  readonly standingSince: string;
   readonly quantities: readonly string[];
+  /** Ids of built-in curves, `attached` for the authors' own, `none` where no curve enters. */
+  readonly noises: readonly string[];
+  /** One a claim, in their printed order. */
   readonly verdicts: readonly VerdictWord[];
 }

@@ -1,6 +1,6 @@
 import type { VerdictWord } from '@/lib/pipeline/result';
 
-const VERDICTS: readonly VerdictWord[] = ['agrees', 'differs', 'unsettled', 'not-computable', 'routes-disagree'];
+export const VERDICTS: readonly VerdictWord[] = ['agrees', 'differs', 'unsettled', 'not-computable', 'routes-disagree'];
 
 /** A filter of the register names a verdict as the result does, or nothing. */
 export const isVerdict = (text: string): text is VerdictWord => (VERDICTS as readonly string[]).includes(text);
