@@ -56,6 +56,10 @@ const web = z.object({
   /** Address of the proxy whose X-Forwarded-For is believed; nobody's when absent. */
   TRUSTED_PROXY: z.string().optional(),
   MAIL_READER_URL: url('http:', 'https:').optional(),
+  /** Sign-in with ORCID: all three, or the button is not there. */
+  ORCID_ISSUER: url('http:', 'https:').transform((text) => new URL(text).origin).optional(),
+  ORCID_CLIENT_ID: z.string().min(3).optional(),
+  ORCID_CLIENT_SECRET: secret(16).optional(),
 });
 
 const worker = z.object({
@@ -90,7 +94,7 @@ export type MigrationEnv = z.infer<typeof migration>;
 export type StoreEnv = Pick<WebEnv, keyof typeof store>;
 export type MailEnv = Pick<WorkerEnv, 'SMTP_URL' | 'MAIL_FROM'>;
 
-export const webEnv = (source: Source = process.env): WebEnv => guardPlace(read('web', web, source));
+export const webEnv = (source: Source = process.env): WebEnv => guardProvider(guardPlace(read('web', web, source)));
 export const workerEnv = (source: Source = process.env): WorkerEnv => guardPlace(read('worker', worker, source));
 export const signerEnv = (source: Source = process.env): SignerEnv => guardPlace(read('signer', signer, source));
 export const migrationEnv = (source: Source = process.env): MigrationEnv => read('migration', migration, source);
@@ -108,6 +112,14 @@ function guardPlace<T extends { NODE_ENV: string; APP_URL: string; DEMO: boolean
   if (env.NODE_ENV !== 'production' || isLoopback(env.APP_URL)) return env;
   if (env.DEMO) throw new Error(`DEMO=1 is for this machine alone, but APP_URL is ${env.APP_URL}; unset DEMO.`);
   if (!env.APP_URL.startsWith('https:')) throw new Error(`APP_URL is ${env.APP_URL}; outside this machine it has to begin with https://.`);
+  return env;
+}
+
+/** A provider half named would fail at somebody's first sign-in; one without TLS would vouch for anybody. */
+function guardProvider(env: WebEnv): WebEnv {
+  const given = [env.ORCID_ISSUER, env.ORCID_CLIENT_ID, env.ORCID_CLIENT_SECRET].filter(Boolean).length;
+  if (given !== 0 && given !== 3) throw new Error('ORCID_ISSUER, ORCID_CLIENT_ID and ORCID_CLIENT_SECRET belong together: set all three, or none.');
+  if (env.ORCID_ISSUER?.startsWith('http:') && !isLoopback(env.ORCID_ISSUER)) throw new Error(`ORCID_ISSUER is ${env.ORCID_ISSUER}; outside this machine it has to begin with https://.`);
   return env;
 }
 

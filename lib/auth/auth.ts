@@ -1,16 +1,22 @@
 import { betterAuth } from 'better-auth';
 import { drizzleAdapter } from 'better-auth/adapters/drizzle';
-import { accounts, rateLimits, sessions, users, verifications } from '@/db/schema/accounts';
+import { twoFactor } from 'better-auth/plugins';
+import { accounts, rateLimits, sessions, twoFactors, users, verifications } from '@/db/schema/accounts';
 import { database, type Database } from '@/db/client';
 import { isLoopback, webEnv } from '@/lib/env';
 import { allowedOrigins } from './allowed-origins';
 import { postAccountMail, type AccountMail } from './account-mail';
+import { challengeAfterProvider, CHALLENGE_LIVES_S } from './challenge-after-provider';
+import { ORCID, orcidClientOf, orcidPlugin, type OrcidClient } from './orcid';
 import { hashPassword, verifyPassword } from './password-hash';
+import { isPlaceholderAddress } from './placeholder-address';
 
 export interface AuthParts {
   readonly database: Database;
   readonly env: { readonly APP_URL: string; readonly DEMO: boolean; readonly AUTH_SECRET: string; readonly TRUSTED_PROXY?: string | undefined };
   readonly post: (mail: AccountMail) => Promise<void>;
+  /** Given to the doors that lead to ORCID and back; all others need not wait for its discovery document. */
+  readonly orcid?: OrcidClient;
 }
 
 export const PASSWORD_LENGTH = { min: 15, max: 256 } as const;
@@ -19,15 +25,20 @@ export const SESSION_ABSOLUTE_S = 7 * DAY_S;
 
 /** What the library may not be asked for: nothing here uses it, so it is no door. */
 const CLOSED_PATHS = [
-  '/update-user', '/change-email', '/delete-user', '/delete-user/callback', '/link-social', '/unlink-account', '/sign-in/social',
-  '/list-accounts', '/refresh-token', '/get-access-token', '/account-info', '/verify-password', '/update-session', '/error',
+  '/update-user', '/change-email', '/delete-user', '/delete-user/callback', '/unlink-account', '/list-accounts', '/refresh-token',
+  '/get-access-token', '/account-info', '/verify-password', '/update-session', '/error',
+  '/two-factor/get-totp-uri', '/two-factor/send-otp', '/two-factor/verify-otp',
 ];
+const PROVIDER_PATHS = ['/sign-in/social', '/link-social', '/callback/:id'];
+
+/** Wrong codes in a row, over all challenges, before an account's second factor rests. */
+export const WRONG_CODES = { atMost: 10, restsS: 15 * 60 } as const;
 
 /**
  * The absolute life of a session is the library's `expiresIn` without refresh; the idle limit is
  * ours (`current-actor.ts`), because a page cannot renew a cookie and would sign people out mid-work.
  */
-export function createAuth({ database: db, env, post }: AuthParts) {
+export function createAuth({ database: db, env, post, orcid }: AuthParts) {
   const secure = env.APP_URL.startsWith('https:');
   const cookie = (name: string) => ({
     name: `${secure ? '__Host-' : ''}counterfoil.${name}`,
@@ -39,13 +50,21 @@ export function createAuth({ database: db, env, post }: AuthParts) {
     secret: env.AUTH_SECRET,
     trustedOrigins: [...allowedOrigins(env)],
     telemetry: { enabled: false },
-    disabledPaths: CLOSED_PATHS,
+    disabledPaths: orcid ? CLOSED_PATHS : [...CLOSED_PATHS, ...PROVIDER_PATHS],
     database: drizzleAdapter(db, {
       provider: 'pg',
       usePlural: true,
       transaction: true,
-      schema: { users, sessions, accounts, verifications, rateLimits },
+      schema: { users, sessions, accounts, verifications, rateLimits, twoFactors },
     }),
+    plugins: [secondFactor(), ...(orcid ? [orcidPlugin(orcid)] : [])],
+    hooks: { after: challengeAfterProvider },
+    account: {
+      // ORCID vouches for an iD, not for an address, so no two accounts are ever joined by an address.
+      accountLinking: { enabled: true, trustedProviders: [ORCID], allowDifferentEmails: true, disableImplicitLinking: true },
+      updateAccountOnSignIn: false,
+    },
+    databaseHooks: { account: { create: { before: async (account) => ({ data: { ...account, ...NO_TOKENS } }) }, update: { before: async (account) => ({ data: { ...account, ...NO_TOKENS } }) } } },
     user: {
       additionalFields: {
         role: { type: 'string', required: false, input: false, defaultValue: 'member' },
@@ -61,21 +80,21 @@ export function createAuth({ database: db, env, post }: AuthParts) {
       password: { hash: hashPassword, verify: verifyPassword },
       revokeSessionsOnPasswordReset: true,
       resetPasswordTokenExpiresIn: 3600,
-      sendResetPassword: ({ user, token }) =>
-        post({ kind: 'reset-password', to: user.email, name: user.name, url: `${env.APP_URL}/reset-password?token=${encodeURIComponent(token)}` }),
+      sendResetPassword: async ({ user, token }) =>
+        isPlaceholderAddress(user.email) ? undefined : post({ kind: 'reset-password', to: user.email, name: user.name, url: `${env.APP_URL}/reset-password?token=${encodeURIComponent(token)}` }),
     },
     emailVerification: {
       sendOnSignUp: true,
       sendOnSignIn: true,
       autoSignInAfterVerification: true,
       expiresIn: DAY_S,
-      sendVerificationEmail: ({ user, url }) => post({ kind: 'verify-address', to: user.email, name: user.name, url }),
+      sendVerificationEmail: async ({ user, url }) => (isPlaceholderAddress(user.email) ? undefined : post({ kind: 'verify-address', to: user.email, name: user.name, url })),
     },
     rateLimit: signInLimits(env),
     advanced: {
       database: { generateId: 'uuid' },
       useSecureCookies: false, // the names below carry the stronger __Host- prefix themselves
-      cookies: { session_token: cookie('session'), dont_remember: cookie('dont_remember'), session_data: cookie('session_data'), account_data: cookie('account_data') },
+      cookies: { session_token: cookie('session'), ...Object.fromEntries(['dont_remember', 'session_data', 'account_data', 'two_factor', 'trust_device', 'state'].map((name) => [name, cookie(name)])) },
       ipAddress: env.TRUSTED_PROXY
         ? { ipAddressHeaders: ['x-forwarded-for'], trustedProxies: [env.TRUSTED_PROXY] }
         : { ipAddressHeaders: ['x-counterfoil-client-address'] },
@@ -83,6 +102,18 @@ export function createAuth({ database: db, env, post }: AuthParts) {
     logger: { level: 'error' },
   });
 }
+
+/** ORCID's own tokens are of no use here, and what is not kept cannot leak. */
+const NO_TOKENS = { accessToken: null, refreshToken: null, idToken: null, accessTokenExpiresAt: null, refreshTokenExpiresAt: null };
+
+/** An account without a password (ORCID alone) proves itself by a young session instead; `serve-auth` sees to that. */
+const secondFactor = () =>
+  twoFactor({
+    issuer: 'Counterfoil',
+    allowPasswordless: true,
+    twoFactorCookieMaxAge: CHALLENGE_LIVES_S,
+    accountLockout: { enabled: true, maxFailedAttempts: WRONG_CODES.atMost, durationSeconds: WRONG_CODES.restsS },
+  });
 
 /**
  * Per address and path. Without a configured proxy no address can be believed and all clients share
@@ -103,6 +134,9 @@ function signInLimits(env: AuthParts['env']) {
       '/request-password-reset': rule(5),
       '/reset-password': rule(10),
       '/send-verification-email': rule(5),
+      '/sign-in/social': rule(10),
+      '/link-social': rule(10),
+      '/two-factor/*': rule(20),
       '/get-session': false as const,
     },
   };
@@ -110,11 +144,27 @@ function signInLimits(env: AuthParts['env']) {
 
 export type Auth = ReturnType<typeof createAuth>;
 
-const shared = globalThis as { counterfoilAuth?: { database: Database; auth: Auth } };
+const shared = globalThis as { counterfoilAuth?: { database: Database; auth: Auth; orcid: Map<string, Auth> } };
+
+function room() {
+  const db = database();
+  if (shared.counterfoilAuth?.database !== db) shared.counterfoilAuth = { database: db, auth: createAuth({ database: db, env: webEnv(), post: postAccountMail }), orcid: new Map() };
+  return shared.counterfoilAuth;
+}
 
 /** This process's sign-in service. */
-export function auth(): Auth {
-  const db = database();
-  if (shared.counterfoilAuth?.database !== db) shared.counterfoilAuth = { database: db, auth: createAuth({ database: db, env: webEnv(), post: postAccountMail }) };
-  return shared.counterfoilAuth.auth;
+export const auth = (): Auth => room().auth;
+
+/**
+ * The same with ORCID behind it, for one of our own origins: the way back leads to the name under which
+ * the person came, where the cookie of the sign-in lies. Null when ORCID is not configured.
+ */
+export function orcidAuth(origin: string): Auth | null {
+  const env = webEnv();
+  const orcid = orcidClientOf(env);
+  if (!orcid) return null;
+  const { orcid: known, database: db } = room();
+  const made = known.get(origin) ?? createAuth({ database: db, env: { ...env, APP_URL: origin }, post: postAccountMail, orcid });
+  known.set(origin, made);
+  return made;
 }

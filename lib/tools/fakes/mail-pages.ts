@@ -2,7 +2,7 @@ import type { ReceivedMail } from '@/lib/tools/fakes/mail-message';
 
 /** The pages of the demo's mail reader: no script, everything that came by mail is escaped. */
 const ENTITIES: Readonly<Record<string, string>> = { '&': '&amp;', '<': '&lt;', '>': '&gt;', '"': '&quot;', "'": '&#39;' };
-const escapeHtml = (text: string): string => text.replace(/[&<>"']/g, (character) => ENTITIES[character] ?? character);
+export const escapeHtml = (text: string): string => text.replace(/[&<>"']/g, (character) => ENTITIES[character] ?? character);
 
 export const STYLE = `
 :root{color-scheme:light dark;--page:light-dark(#FBFAF6,#12171E);--sheet:light-dark(#fff,#1A212B);--ink:light-dark(#1B2430,#E9ECEF);--ink-2:light-dark(#4A5563,#AEB8C4);--link:light-dark(#1F4E79,#8DBBE8);--hair:light-dark(#BEC6BF,#3C4855)}

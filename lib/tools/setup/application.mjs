@@ -22,11 +22,13 @@ export async function startDemo(supervisor, { dev }) {
 }
 
 async function startFakes(supervisor, ports, env) {
-  for (const held of [ports.store, ports.smtp, ports.reader]) await held.release();
+  for (const held of [ports.store, ports.smtp, ports.reader, ports.openid]) await held.release();
   const store = supervisor.keep(() => startScript('store', 'lib/tools/object-store.ts', env));
   const mail = supervisor.keep(() => startScript('mail', 'lib/tools/mail-reader.ts', env));
+  const openid = supervisor.keep(() => startScript('openid', 'lib/tools/openid-provider.ts', env));
   await waitUntilReady(`${env.MAIL_READER_URL}/`, mail);
   await waitUntilReady(`${env.S3_ENDPOINT}/${env.S3_BUCKET}`, store);
+  await waitUntilReady(`${env.ORCID_ISSUER}/jwks`, openid);
 }
 
 /** With a team's own PostgreSQL, object store and mail server; starts the parts whose role is given. */

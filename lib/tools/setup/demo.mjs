@@ -23,6 +23,7 @@ export async function prepareDemo() {
     store: await reservePort(54340),
     smtp: await reservePort(54340),
     reader: await reservePort(54340),
+    openid: await reservePort(54340),
   };
   const numbers = { postgres: postgres.port, ...Object.fromEntries(Object.entries(ports).map(([name, held]) => [name, held.port])) };
   fs.writeFileSync(PORTS, JSON.stringify(numbers));
@@ -63,6 +64,9 @@ function demoEnvironment(known, ports) {
     MAIL_FROM: 'Counterfoil <desk@counterfoil.example>',
     MAIL_READER_URL: local(ports.reader),
     MAIL_FOLDER: path.join(DATA, 'mail'),
+    ORCID_ISSUER: local(ports.openid),
+    ORCID_CLIENT_ID: 'counterfoil-on-this-machine',
+    ORCID_CLIENT_SECRET: known.openid,
     SIGNING_KEY_FILE: signingKeyFile(),
   };
 }

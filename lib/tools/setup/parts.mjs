@@ -8,7 +8,7 @@ import { ROOT, SetupError } from './ground.mjs';
  * is harmless and goes to all of them.
  */
 const SECRETS = {
-  web: ['DATABASE_URL', 'AUTH_SECRET'],
+  web: ['DATABASE_URL', 'AUTH_SECRET', 'ORCID_CLIENT_SECRET'],
   worker: ['WORKER_DATABASE_URL', 'SMTP_URL'],
   signer: ['SIGNER_DATABASE_URL', 'SIGNING_KEY_FILE'],
 };

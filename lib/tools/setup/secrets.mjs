@@ -4,7 +4,7 @@ import path from 'node:path';
 import { DATA } from './ground.mjs';
 
 const FILE = path.join(DATA, 'secrets.json');
-const NAMES = ['admin', 'owner', 'web', 'worker', 'signer', 'session', 'storeKey', 'storeSecret'];
+const NAMES = ['admin', 'owner', 'web', 'worker', 'signer', 'session', 'storeKey', 'storeSecret', 'openid'];
 
 /** Secrets of this checkout alone, generated once and readable by its user alone. */
 export function secrets() {
