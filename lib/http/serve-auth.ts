@@ -1,36 +1,20 @@
-import { z } from 'zod';
-import { database } from '@/db/client';
-import { recordAudit } from '@/db/writes/audit/record-audit';
-import { auth } from '@/lib/auth/auth';
+import type { z } from 'zod';
+import { auth, orcidAuth } from '@/lib/auth/auth';
 import { allowedOrigins } from '@/lib/auth/allowed-origins';
 import { currentActor } from '@/lib/auth/current-actor';
 import { webEnv } from '@/lib/env';
-import { isUuid } from '@/lib/kernel/uuid';
-import { userIdOf, type Actor } from '@/lib/policy/actor';
+import { isSignedIn, type Actor } from '@/lib/policy/actor';
 import { joinAccountPost } from '@/lib/services/accounts/account-post';
-import { forgetGuesses, guessingRests, noteWrongGuess } from './guess-limit';
+import { CALLBACK, GET_DOORS, POST_DOORS, PROVEN_DOORS, PROVIDER_DOORS } from './auth-doors';
+import { guardedGuess } from './guarded-guess';
+import { noteAccountAct, noteReturn } from './note-account-act';
 import { judgeOrigin } from './origin';
-import { BAD_CREDENTIAL, FOREIGN_ORIGIN, problemResponse, reportDefect, type DoorError } from './problem-response';
+import { badCredential, FOREIGN_ORIGIN, problemResponse, reportDefect, TOKEN_ELSEWHERE, type DoorError } from './problem-response';
+import { unproven, wrongPassword } from './proven-again';
 import { parseInput, readJson } from './read-input';
+import { refuseSecondUse } from './spent-codes';
 
 joinAccountPost();
-
-const email = z.email().max(254);
-const password = z.string().min(1).max(256);
-const nothing = z.strictObject({}).optional();
-
-/** The doors of the sign-in library that are open, each with the strict shape of its body. All else is not there. */
-const POST_DOORS: Readonly<Record<string, z.ZodType>> = {
-  '/sign-in/email': z.strictObject({ email, password, rememberMe: z.boolean().optional() }),
-  '/sign-up/email': z.strictObject({ email, password, name: z.string().trim().min(1).max(120) }),
-  '/sign-out': nothing,
-  '/request-password-reset': z.strictObject({ email }),
-  '/reset-password': z.strictObject({ token: z.string().max(200), newPassword: password }),
-  '/send-verification-email': z.strictObject({ email }),
-  '/change-password': z.strictObject({ currentPassword: password, newPassword: password, revokeOtherSessions: z.literal(true) }),
-  '/revoke-other-sessions': nothing,
-};
-const GET_DOORS = ['/get-session', '/verify-email'];
 
 const NOT_FOUND: DoorError = { code: 'not-found', sentence: 'There is nothing at this address, or nothing you may see.' };
 
@@ -39,9 +23,10 @@ export async function serveAuth(request: Request): Promise<Response> {
   try {
     if (judgeOrigin(request.method, request.headers, allowedOrigins(webEnv())) === 'foreign') return problemResponse(FOREIGN_ORIGIN);
     const actor = await currentActor(request.headers); // ends a session that was idle too long before the library sees it
-    if (!actor.ok) return problemResponse(BAD_CREDENTIAL);
+    if (!actor.ok) return problemResponse(badCredential(actor.error));
+    if (actor.value.kind === 'token') return problemResponse(TOKEN_ELSEWHERE);
     const path = new URL(request.url).pathname.replace(/^\/api\/auth/, '');
-    if (request.method === 'GET') return GET_DOORS.includes(path) ? await ask(request) : problemResponse(NOT_FOUND);
+    if (request.method === 'GET') return GET_DOORS.includes(path) ? await get(request, path, actor.value) : problemResponse(NOT_FOUND);
     const shape = request.method === 'POST' ? POST_DOORS[path] : undefined;
     return shape ? await post(request, path, shape, actor.value) : problemResponse(NOT_FOUND);
   } catch (cause) {
@@ -49,9 +34,24 @@ export async function serveAuth(request: Request): Promise<Response> {
   }
 }
 
-async function ask(request: Request): Promise<Response> {
-  const answer = await auth().handler(request);
+async function ask(request: Request, path: string): Promise<Response> {
+  const desk = PROVIDER_DOORS.includes(path) ? orcidAuth(ownOrigin(request)) : auth();
+  if (!desk) return problemResponse(NOT_FOUND);
+  const answer = await desk.handler(request);
   answer.headers.set('cache-control', 'no-store');
+  return answer;
+}
+
+/** Under which of our names the request came; the gate in front has turned away all others. */
+function ownOrigin(request: Request): string {
+  const env = webEnv();
+  const host = request.headers.get('host') ?? new URL(request.url).host;
+  return allowedOrigins(env).find((origin) => new URL(origin).host === host) ?? env.APP_URL;
+}
+
+async function get(request: Request, path: string, actor: Actor): Promise<Response> {
+  const answer = await ask(request, path);
+  if (path === CALLBACK) await noteReturn(actor, answer);
   return answer;
 }
 
@@ -64,24 +64,17 @@ async function post(request: Request, path: string, shape: z.ZodType, actor: Act
   headers.delete('content-length');
   headers.set('content-type', 'application/json');
   const own = new Request(request.url, { method: 'POST', headers, body: JSON.stringify(body.value ?? {}) });
-  const answer = path === '/sign-in/email' ? await signIn(own, (body.value as { email: string }).email) : await ask(own);
+  const answer = await askAsOne(own, path, body.value, actor);
   if (answer.ok) await noteAccountAct(actor, path, answer);
   return answer;
 }
 
-/** The library has its own transactions, so this entry follows the act instead of sharing one with it. */
-async function noteAccountAct(actor: Actor, path: string, answer: Response): Promise<void> {
-  const said = (await answer.clone().json().catch(() => null)) as { user?: { id?: unknown } } | null;
-  const userId = isUuid(said?.user?.id) ? said.user.id : userIdOf(actor);
-  await database().transaction((tx) => recordAudit(tx, { actor, action: `account${path.replaceAll('/', '.')}`, subjectKind: 'account', subjectId: userId }));
-}
-
-async function signIn(request: Request, address: string): Promise<Response> {
-  const retryAfterS = await guessingRests(address);
-  if (retryAfterS > 0)
-    return problemResponse({ code: 'limit', sentence: `Too many wrong passwords for this address. Wait ${Math.ceil(retryAfterS / 60)} min, or choose a new password by mail.`, retryAfterS });
-  const answer = await ask(request);
-  if (answer.status === 401) await noteWrongGuess(address);
-  if (answer.ok) await forgetGuesses(address);
-  return answer;
+/** Each door by its own guard: guesses at passwords are counted, codes are used once, strength is proven before it is changed. */
+async function askAsOne(request: Request, path: string, body: unknown, actor: Actor): Promise<Response> {
+  if (path === '/sign-in/email') return guardedGuess((body as { email: string }).email, () => ask(request, path));
+  if (path === '/two-factor/verify-totp' && !isSignedIn(actor)) return refuseSecondUse(await ask(request, path), (body as { code: string }).code);
+  if (!isSignedIn(actor) || !PROVEN_DOORS.includes(path)) return ask(request, path);
+  const fault = await unproven(path, actor, request.headers);
+  if (fault) return problemResponse(fault);
+  return guardedGuess(actor.userId, async () => (path === '/link-social' ? await wrongPassword(body, actor, request.headers) : null) ?? ask(request, path));
 }

@@ -83,6 +83,8 @@ export type SubmissionAction = keyof typeof SUBMISSION_ACTIONS;
 export const ACCOUNT_ACTIONS = {
   'register.read': ['visitor', 'member', 'editor', 'administrator'],
   'account.read-own': ['member', 'editor', 'administrator'],
+  /** Name, address, ways in, sessions, letters: one's own alone. */
+  'account.edit-own': ['member', 'editor', 'administrator'],
   'account.manage-tokens': ['member', 'editor', 'administrator'],
   'submission.create': ['member', 'editor', 'administrator'],
   'submission.list-own': ['member', 'editor', 'administrator'],
