@@ -13,10 +13,13 @@ const EVERYWHERE = [
     : []),
 ];
 
+const NOWHERE = "frame-ancestors 'none'; base-uri 'none'; form-action 'none'";
+
 /** Files and API answers load nothing, should a browser ever be talked into showing one. */
-const NOTHING_LOADS = [
-  { key: 'Content-Security-Policy', value: "default-src 'none'; frame-ancestors 'none'; base-uri 'none'; form-action 'none'" },
-];
+const NOTHING_LOADS = [{ key: 'Content-Security-Policy', value: `default-src 'none'; ${NOWHERE}` }];
+
+/** A worker lives under the policy of its own script: it may load the rest of its code, and connects to nothing. */
+const SCRIPTS_LOAD = [{ key: 'Content-Security-Policy', value: `default-src 'none'; script-src 'self'; ${NOWHERE}` }];
 
 const config: NextConfig = {
   poweredByHeader: false,
@@ -36,7 +39,8 @@ const config: NextConfig = {
   async headers() {
     return [
       { source: '/:path*', headers: EVERYWHERE },
-      { source: '/(api|_next)/:path*', headers: NOTHING_LOADS },
+      { source: '/api/:path*', headers: NOTHING_LOADS },
+      { source: '/_next/:path*', headers: SCRIPTS_LOAD },
       { source: '/(healthz|readyz)', headers: NOTHING_LOADS },
     ];
   },

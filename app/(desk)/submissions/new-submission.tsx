@@ -1,25 +1,27 @@
 'use client';
 import { useRouter } from 'next/navigation';
 import type { Route } from 'next';
-import { useRef, useState } from 'react';
+import { useRef, useState, type RefObject } from 'react';
 import { Button } from '@/app/_ui/primitives/button';
 import { ProgressBar } from '@/app/_ui/primitives/progress';
 import { Trouble } from '../act-parts';
 import { createDraft } from '../compose/actions';
+import { nameFiles } from '../preview/named-files';
+import type { NamedFile } from '../preview/preview-message';
 import { useAct } from '../use-act';
+import { LookFirst } from './look-first';
 import { sendFolder } from './send-folder';
 
-/** An empty draft, or a whole claim-sheet folder (or its archive) as a draft. */
+/** An empty draft, a whole claim-sheet folder (or its archive) as a draft, or first a look at one. */
 export function NewSubmission() {
   const router = useRouter();
   const open = (id: string) => router.push(`/compose/${id}` as Route);
   const making = useAct(createDraft, ({ id }) => open(id));
   const [fraction, setFraction] = useState<number | null>(null);
   const [trouble, setTrouble] = useState<readonly string[] | null>(null);
-  const folder = useRef<HTMLInputElement>(null);
-  const archive = useRef<HTMLInputElement>(null);
-  const send = async (list: FileList | null) => {
-    const files = [...(list ?? [])];
+  const [chosen, setChosen] = useState<readonly NamedFile[]>([]);
+  const [folder, archive, lookFolder, lookArchive] = [useRef<HTMLInputElement>(null), useRef<HTMLInputElement>(null), useRef<HTMLInputElement>(null), useRef<HTMLInputElement>(null)];
+  const send = async (files: readonly NamedFile[]) => {
     if (files.length === 0) return;
     setTrouble(null);
     setFraction(0);
@@ -35,10 +37,25 @@ export function NewSubmission() {
         <Button busy={fraction === null ? null : 'Sending'} onClick={() => folder.current?.click()}>Load a claim-sheet folder</Button>
         <Button busy={fraction === null ? null : 'Sending'} onClick={() => archive.current?.click()}>Load a zip of one</Button>
       </div>
-      <input ref={folder} type="file" multiple className="sr-only" aria-label="Claim-sheet folder to load" tabIndex={-1} {...{ webkitdirectory: '' }} onChange={(e) => { void send(e.target.files); e.target.value = ''; }} />
-      <input ref={archive} type="file" accept=".zip" className="sr-only" aria-label="Zip archive to load" tabIndex={-1} onChange={(e) => { void send(e.target.files); e.target.value = ''; }} />
+      <Picker at={folder} label="Claim-sheet folder to load" whole onPick={(files) => void send(files)} />
+      <Picker at={archive} label="Zip archive to load" onPick={(files) => void send(files)} />
+      <Picker at={lookFolder} label="Claim-sheet folder to look at" whole onPick={setChosen} />
+      <Picker at={lookArchive} label="Zip archive to look at" onPick={setChosen} />
       {fraction !== null && <div className="max-w-measure"><ProgressBar label="Folder on its way" fraction={fraction} /></div>}
       <Trouble trouble={trouble ?? making.trouble} />
+      <LookFirst chosen={chosen} onChoose={setChosen} onPickFolder={() => lookFolder.current?.click()} onPickArchive={() => lookArchive.current?.click()} onDraft={(files) => void send(files)} />
     </div>
   );
 }
+
+interface PickerProps {
+  readonly at: RefObject<HTMLInputElement | null>;
+  readonly label: string;
+  /** A folder; else one archive. */
+  readonly whole?: boolean;
+  readonly onPick: (files: readonly NamedFile[]) => void;
+}
+
+const Picker = ({ at, label, whole, onPick }: PickerProps) => (
+  <input ref={at} type="file" className="sr-only" aria-label={label} tabIndex={-1} {...(whole ? { webkitdirectory: '', multiple: true } : { accept: '.zip' })} onChange={(e) => { onPick(nameFiles(e.target.files)); e.target.value = ''; }} />
+);

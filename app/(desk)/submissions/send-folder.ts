@@ -1,5 +1,6 @@
 'use client';
-import { nameOf } from '../compose/[id]/upload';
+import { folderFault } from '../preview/named-files';
+import type { NamedFile } from '../preview/preview-message';
 
 export type Sent = { readonly ok: true; readonly id: string } | { readonly ok: false; readonly sentences: readonly string[] };
 
@@ -9,15 +10,12 @@ interface Refusal {
   readonly problems?: readonly { readonly where: string; readonly saw: string; readonly expected: string }[];
 }
 
-const hidden = (name: string): boolean => name.split('/').some((part) => part.startsWith('.'));
-
 /** A folder with its claim.json, or one archive, in a single request: it becomes a draft, or nothing does. */
-export function sendFolder(files: readonly File[], onProgress: (fraction: number) => void): Promise<Sent> {
-  const wanted = files.filter((f) => !hidden(nameOf(f)));
-  const isArchive = wanted.length === 1 && /\.zip$/i.test(wanted[0]?.name ?? '');
-  if (!isArchive && !wanted.some((f) => nameOf(f) === 'claim.json')) return Promise.resolve({ ok: false, sentences: ['The folder holds no claim.json. Choose the folder it lies in, or begin a new submission and add the files there.'] });
+export function sendFolder(files: readonly NamedFile[], onProgress: (fraction: number) => void): Promise<Sent> {
+  const fault = folderFault(files);
+  if (fault !== null) return Promise.resolve({ ok: false, sentences: [fault] });
   const form = new FormData();
-  for (const file of wanted) form.append('file', file, nameOf(file));
+  for (const { name, file } of files) form.append('file', file, name);
   return new Promise((resolve) => {
     const request = new XMLHttpRequest();
     request.open('POST', '/api/v1/submissions');
