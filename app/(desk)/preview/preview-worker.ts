@@ -7,7 +7,7 @@ import { BlobReader } from '@zip.js/zip.js';
 import { z } from 'zod';
 import { openArchive } from '@/lib/formats/archive';
 import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
-import { Sha256 } from '@/lib/kernel/sha256';
+import { Sha256 } from '@/lib/formats/sha256';
 import { preview } from '@/lib/pipeline/preview';
 import type { Source } from '@/lib/pipeline/reproduce-with';
 import type { NamedFile, PreviewAsk, PreviewNote } from './preview-message';

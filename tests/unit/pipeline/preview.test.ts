@@ -2,7 +2,7 @@ import { createReadStream, readFileSync } from 'node:fs';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { describe, expect, it } from 'vitest';
-import { Sha256 } from '@/lib/kernel/sha256';
+import { Sha256 } from '@/lib/formats/sha256';
 import { preview } from '@/lib/pipeline/preview';
 import { runFolder } from '../../golden/run-folder';
 

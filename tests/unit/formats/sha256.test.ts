@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
-import { Sha256 } from '@/lib/kernel/sha256';
+import { Sha256 } from '@/lib/formats/sha256';
 import { seededRandom } from '../../support/seeded-random';
 
 const platform = (bytes: Uint8Array): string => createHash('sha256').update(bytes).digest('hex');
