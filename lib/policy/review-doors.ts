@@ -36,5 +36,7 @@ export const REVIEW_DOORS = {
   'GET /records/{id}/signature.json': ['register.read'],
   'GET /records/{id}/signed-record.json': ['register.read'],
   'GET /records/{id}/badge.svg': ['register.read'],
+  'GET /register/records.csv': ['register.read'],
+  'GET /register/feed.atom': ['register.read'],
   'GET /keys/{file}': ['register.read'],
 } as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;

@@ -78,7 +78,8 @@ function searchText(value: string | undefined, problems: Problem[]): string | un
   const clean = value.replace(/[\u0000-\u001f\u007f]+/g, ' ').trim();
   if (clean !== value) problems.push({ code: 'register/control-characters', where: '/text', saw: 'control characters', expected: 'words; the characters are read as spaces' });
   if (clean.length > longestText) problems.push({ code: 'register/too-long', where: '/text', saw: `${clean.length} characters`, expected: `at most ${longestText}; the first ${longestText} are searched for` });
-  return clean.slice(0, longestText) || undefined;
+  // The database's parser stacks every dash of a row of them, and has room for 32.
+  return clean.replace(/-(?:\s*-)+/g, '-').slice(0, longestText) || undefined;
 }
 
 function days(from: string | undefined, to: string | undefined, problems: Problem[]): Pick<RegisterAsk, 'from' | 'to'> {
