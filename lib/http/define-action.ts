@@ -7,7 +7,7 @@ import type { Actor } from '@/lib/policy/actor';
 import type { Door } from '@/lib/policy/doors';
 import type { Outcome } from '@/lib/services/app-error';
 import { judgeOrigin } from './origin';
-import { BAD_CREDENTIAL, FOREIGN_ORIGIN, reportDefect, type DoorError } from './problem-response';
+import { badCredential, FOREIGN_ORIGIN, reportDefect, TOKEN_ELSEWHERE, type DoorError } from './problem-response';
 import { spend, WRITE_RATE, type Rate } from './rate';
 import { parseInput } from './read-input';
 
@@ -36,7 +36,8 @@ async function enter<I, T>(spec: ActionSpec<I, T>, raw: unknown, sent: Headers):
   try {
     if (judgeOrigin('POST', sent, allowedOrigins(webEnv())) === 'foreign') return refuse(FOREIGN_ORIGIN);
     const actor = await currentActor(sent);
-    if (!actor.ok) return refuse(BAD_CREDENTIAL);
+    if (!actor.ok) return refuse(badCredential(actor.error));
+    if (actor.value.kind === 'token') return refuse(TOKEN_ELSEWHERE);
     const tooOften = await spend(spec.door, spec.rate ?? WRITE_RATE, actor.value);
     if (tooOften) return refuse(tooOften);
     const input = parseInput(spec.input, raw instanceof FormData ? fieldsOf(raw) : raw);

@@ -6,10 +6,10 @@ import { currentActor } from '@/lib/auth/current-actor';
 import { isSignedIn, VISITOR, type Actor, type SignedInActor } from '@/lib/policy/actor';
 import type { Outcome } from '@/lib/services/app-error';
 
-/** Who looks at this page; asked once a request however many parts of the page ask. */
+/** Who looks at this page; asked once a request however many parts of the page ask. A token opens no page. */
 export const loadActor: () => Promise<Actor> = cache(async () => {
   const actor = await currentActor(new Headers(await headers()));
-  return actor.ok ? actor.value : VISITOR;
+  return actor.ok && actor.value.kind !== 'token' ? actor.value : VISITOR;
 });
 
 /** The member, or the sign-in page with the way back. */

@@ -1,10 +1,12 @@
 import { randomUUID } from 'node:crypto';
 import type { Problem } from '@/lib/kernel/problem';
 import { assertNever } from '@/lib/kernel/assert-never';
+import type { BadCredential } from '@/lib/auth/current-actor';
+import type { CredentialFault } from '@/lib/auth/find-token';
 import type { AppError, AppErrorCode } from '@/lib/services/app-error';
 
 /** What a door adds to the ways a verb can end: the request never reached a verb. */
-export type DoorErrorCode = AppErrorCode | 'foreign-origin' | 'bad-credential' | 'too-large' | 'unsupported-media' | 'method-not-allowed';
+export type DoorErrorCode = AppErrorCode | 'foreign-origin' | 'bad-credential' | 'too-large' | 'unsupported-media' | 'method-not-allowed' | 'precondition-required' | 'misdirected';
 
 export interface DoorError {
   readonly code: DoorErrorCode;
@@ -12,16 +14,21 @@ export interface DoorError {
   readonly problems?: readonly Problem[];
   readonly retryAfterS?: number;
   readonly reference?: string;
+  /** A token would need one of these. */
+  readonly scopes?: readonly string[] | null;
 }
 
 export const FOREIGN_ORIGIN: DoorError = {
   code: 'foreign-origin',
   sentence: 'The request did not come from this site. Send it from a page of this site, or with a bearer token.',
 };
-export const BAD_CREDENTIAL: DoorError = {
-  code: 'bad-credential',
-  sentence: 'The token in the Authorization header is not known here. Make a new one, or leave the header out.',
+const CREDENTIAL_SENTENCES: Readonly<Record<CredentialFault, string>> = {
+  'unknown-token': 'The token in the Authorization header is not known here. Expected: Bearer and a token that begins with cf_. Make a new one, or leave the header out.',
+  'expired-token': 'This token has expired. Make a new one in your account.',
+  'revoked-token': 'This token was revoked. Make a new one in your account.',
 };
+export const badCredential = ({ reason }: BadCredential): DoorError => ({ code: 'bad-credential', sentence: CREDENTIAL_SENTENCES[reason] });
+export const TOKEN_ELSEWHERE: DoorError = { code: 'denied', sentence: 'A token is for the addresses under /api/v1. Sign in to do this on a page of this site.' };
 
 export function statusOf(code: DoorErrorCode): number {
   switch (code) {
@@ -34,6 +41,8 @@ export function statusOf(code: DoorErrorCode): number {
     case 'precondition': return 412;
     case 'too-large': return 413;
     case 'unsupported-media': return 415;
+    case 'misdirected': return 421;
+    case 'precondition-required': return 428;
     case 'limit': return 429;
     case 'defect': return 500;
     default: return assertNever(code);
@@ -52,6 +61,8 @@ const TITLES: Readonly<Record<DoorErrorCode, string>> = {
   precondition: 'Not the version you saw',
   'too-large': 'Too large',
   'unsupported-media': 'Not a form we read',
+  misdirected: 'Another host was asked',
+  'precondition-required': 'Which version is meant?',
   limit: 'Too often',
   defect: 'A defect of ours',
 };
@@ -69,8 +80,16 @@ export const problemBody = (error: DoorError) => ({
 export function problemResponse(error: DoorError): Response {
   const headers = new Headers({ 'content-type': 'application/problem+json', 'cache-control': 'no-store' });
   if (error.retryAfterS !== undefined) headers.set('retry-after', String(Math.ceil(error.retryAfterS)));
-  if (error.code === 'signed-out' || error.code === 'bad-credential') headers.set('www-authenticate', 'Bearer realm="counterfoil"');
+  const challenge = challengeOf(error);
+  if (challenge) headers.set('www-authenticate', challenge);
   return new Response(JSON.stringify(problemBody(error)), { status: statusOf(error.code), headers });
+}
+
+/** RFC 6750: what is wrong with the token, or that one is wanted. */
+function challengeOf({ code, scopes }: DoorError): string | null {
+  if (code === 'signed-out') return 'Bearer realm="counterfoil"';
+  if (code === 'bad-credential') return 'Bearer realm="counterfoil", error="invalid_token"';
+  return scopes ? `Bearer realm="counterfoil", error="insufficient_scope", scope="${scopes.join(' ')}"` : null;
 }
 
 /** What nobody foresaw: the reader gets a reference, the log gets the cause. */

@@ -1,5 +1,6 @@
 import type { z } from 'zod';
 import type { Problem } from '@/lib/kernel/problem';
+import { describe, pointer } from '@/lib/claims/pointer';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import type { DoorError } from './problem-response';
 
@@ -9,14 +10,21 @@ export const MAX_JSON_BYTES = 1024 * 1024;
 export function parseInput<T>(schema: z.ZodType<T>, raw: unknown): Result<T, DoorError> {
   const parsed = schema.safeParse(raw);
   if (parsed.success) return ok(parsed.data);
-  const problems = parsed.error.issues.map(asProblem);
+  const problems = parsed.error.issues.map((issue) => asProblem(issue, raw));
   return err({ code: 'invalid', sentence: problems.length === 1 ? 'One field is not as expected.' : `${problems.length} fields are not as expected.`, problems });
 }
 
-function asProblem(issue: z.core.$ZodIssue): Problem {
-  const where = `/${issue.path.map(String).join('/')}`;
+/** `where` is a JSON Pointer into the body, or names the parameter of the address. */
+function asProblem(issue: z.core.$ZodIssue, raw: unknown): Problem {
+  const where = pointer(...issue.path);
   if (issue.code === 'unrecognized_keys') return { code: 'http/unknown-field', where, saw: issue.keys.join(', '), expected: 'no field of that name' };
-  return { code: `http/${issue.code.replaceAll('_', '-')}`, where, saw: 'something else', expected: issue.message };
+  return { code: `http/${issue.code.replaceAll('_', '-')}`, where, saw: seen(raw, issue.path), expected: issue.message };
+}
+
+/** What stood there, but for what nobody else should read over a shoulder. */
+function seen(raw: unknown, path: readonly PropertyKey[]): string {
+  if (path.some((part) => /password|secret|token|code/i.test(String(part)))) return 'what was sent';
+  return describe(path.reduce<unknown>((value, part) => (typeof value === 'object' && value !== null ? (value as Record<PropertyKey, unknown>)[part] : undefined), raw));
 }
 
 /** Reads a JSON body within its limit; an absent body is `undefined`, which a schema may allow. */

@@ -3,6 +3,7 @@ import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import type { DoorError } from './problem-response';
+import type { UploadParts } from './upload-parts';
 
 export interface UploadPart {
   /** Name of the form's field. */
@@ -17,15 +18,20 @@ const MAX_PARTS = 80;
 /**
  * Walks a multipart body file by file, in order, never holding more than a few chunks: the next file
  * is read when `take` has finished with this one. Plain fields are handed to `field`.
- * `take` has to read or drain each stream; its error ends the walk.
+ * `take` has to read or drain each stream; its error ends the walk. With `parts` all is hashed on the way.
  */
-export async function readUpload(request: Request, take: (part: UploadPart) => Promise<void>, field: (name: string, value: string) => void = () => undefined): Promise<Result<number, DoorError>> {
+export async function readUpload(request: Request, take: (part: UploadPart) => Promise<void>, field: (name: string, value: string) => void = () => undefined, parts?: UploadParts): Promise<Result<number, DoorError>> {
   if (!request.body) return err({ code: 'invalid', sentence: 'The request has no body; expected files as multipart/form-data.' });
   const type = request.headers.get('content-type') ?? '';
   if (!/^multipart\/form-data\s*;/i.test(type)) return err({ code: 'unsupported-media', sentence: `The body is ${type || 'of no declared type'}; expected multipart/form-data.` });
   const parser = makeParser(type);
   if (!parser) return err({ code: 'invalid', sentence: 'The multipart header names no boundary.' });
-  return walk(request.body, parser, take, field);
+  const took = parts ? (part: UploadPart) => take({ ...part, stream: parts.hashing(part.field, part.name, part.stream) }) : take;
+  const noted = (name: string, value: string): void => {
+    parts?.addField(name, value);
+    field(name, value);
+  };
+  return walk(request.body, parser, took, noted);
 }
 
 function makeParser(type: string): busboy.Busboy | null {

@@ -1,32 +1,27 @@
 import { text } from 'node:stream/consumers';
-import { ok, type Result } from '@/lib/kernel/result';
+import type { Result } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { AppFailure } from '@/lib/services/app-error';
-import { addFile, mayAdd } from '@/lib/services/files/add-file';
+import { addFiles } from '@/lib/services/files/add-files';
 import { isZip, unpackZip } from '@/lib/services/files/unpack-zip';
 import { createFromFolder } from '@/lib/services/submissions/load-sheet';
 import type { FileView } from '@/lib/services/submissions/submission-view';
 import type { DoorError } from './problem-response';
 import { readUpload, type UploadPart } from './read-upload';
+import type { UploadParts } from './upload-parts';
 
-/** Files of one request into a draft. Who may not add is told before a byte is stored. */
-export async function uploadFiles(actor: Actor, submissionId: string, request: Request): Promise<Result<readonly FileView[], DoorError>> {
-  const open = await mayAdd(actor, submissionId, '');
-  if (!open.ok) return open;
-  const stored: FileView[] = [];
-  return unlessBroken(async () => {
-    const read = await readUpload(request, async ({ name, stream }) => {
-      const added = await addFile(actor, submissionId, { name, stream });
-      if (!added.ok) throw new AppFailure(added.error);
-      stored.push(added.value);
-    });
-    if (!read.ok) return read;
-    return stored.length > 0 ? ok(stored) : { ok: false, error: { code: 'invalid', sentence: 'No file came with the request.' } };
-  });
+/** Files of one request into a draft, all or none. Who may not add is told before a byte is read. */
+export function uploadFiles(actor: Actor, submissionId: string, request: Request, parts?: UploadParts): Promise<Result<readonly FileView[], DoorError>> {
+  return unlessBroken(() =>
+    addFiles(actor, submissionId, async (take) => {
+      const read = await readUpload(request, ({ name, stream }) => take({ name, stream }), () => undefined, parts);
+      if (!read.ok) throw new BadUpload(read.error);
+    }),
+  );
 }
 
 /** A claim sheet with its files, or the same as one archive, becomes a draft. */
-export function uploadFolder(actor: Actor, request: Request): Promise<Result<{ readonly id: string }, DoorError>> {
+export function uploadFolder(actor: Actor, request: Request, parts?: UploadParts): Promise<Result<{ readonly id: string }, DoorError>> {
   let claimJson: string | null = null;
   const isClaim = (name: string, field: string): boolean => field === 'claim' || name === 'claim.json';
   return unlessBroken(() =>
@@ -38,9 +33,10 @@ export function uploadFolder(actor: Actor, request: Request): Promise<Result<{ r
           else if (isClaim(name, field)) claimJson = await text(stream);
           else await take({ name, stream });
         };
-        const read = await readUpload(request, sort, (name, value) => {
+        const named = (name: string, value: string): void => {
           if (name === 'claim') claimJson = value;
-        });
+        };
+        const read = await readUpload(request, sort, named, parts);
         if (!read.ok) throw new BadUpload(read.error);
       },
     }),

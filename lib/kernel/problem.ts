@@ -12,4 +12,4 @@ export interface Problem {
 }
 
 export const formatProblem = (p: Problem): string =>
-  `${p.where}: saw ${p.saw}; expected ${p.expected}.${p.hint ? ` ${p.hint}` : ''}`;
+  `${p.where === '' ? '' : `${p.where}: `}saw ${p.saw}; expected ${p.expected}.${p.hint ? ` ${p.hint}` : ''}`;

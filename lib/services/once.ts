@@ -10,7 +10,8 @@ import { recordAnswer } from '@/db/writes/requests/record-answer';
 export interface OnceKey {
   readonly userId: string;
   readonly key: string;
-  readonly requestDigest: string;
+  /** Of an upload it is known only when the bytes have been read, which is before the act. */
+  readonly requestDigest: () => string;
   /** How the door will answer this value. */
   readonly answer: (value: unknown) => { readonly status: number; readonly body: unknown };
 }
@@ -21,5 +22,5 @@ export const underKey = <T>(key: OnceKey, work: () => Promise<T>): Promise<T> =>
 
 export async function recordAnswerOnce(tx: Transaction, value: unknown): Promise<void> {
   const key = current.getStore();
-  if (key) await recordAnswer(tx, { userId: key.userId, key: key.key, requestDigest: key.requestDigest, ...key.answer(value) });
+  if (key) await recordAnswer(tx, { userId: key.userId, key: key.key, requestDigest: key.requestDigest(), ...key.answer(value) });
 }

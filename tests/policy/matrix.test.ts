@@ -3,11 +3,13 @@ import { ACCOUNT_ACTIONS, SUBMISSION_ACTIONS, type AccountAction, type Submissio
 import { VISITOR, type Actor } from '@/lib/policy/actor';
 import type { AccountRole } from '@/lib/policy/account-role';
 import type { SubmissionFacts } from '@/lib/policy/facts';
-import { may, mayGenerally } from '@/lib/policy/grant';
+import { beyondScope, may, mayGenerally } from '@/lib/policy/grant';
 import { SUBMISSION_STATES } from '@/lib/policy/submission-state';
+import { TOKEN_SCOPES, type TokenScope } from '@/lib/policy/token-scopes';
 
 /** Everybody who could ask: a kind of account and a part in the submission. */
 const member = (accountRole: AccountRole): Actor => ({ kind: 'member', userId: 'u', name: 'U', accountRole });
+const token = (name: string, ...scopes: TokenScope[]): Actor => ({ kind: 'token', userId: 'u', name, accountRole: 'member', tokenId: 't', scopes });
 const WHO: Readonly<Record<string, { actor: Actor; part: Partial<SubmissionFacts> }>> = {
   author: { actor: member('member'), part: { authorship: 'author' } },
   'co-author': { actor: member('member'), part: { authorship: 'co-author' } },
@@ -48,6 +50,9 @@ function printMatrix(): string {
     const cells = [VISITOR, member('member'), member('editor'), member('administrator')].map((actor) => (mayGenerally(action, actor).ok ? 'Y' : '.'));
     lines.push(`  ${action}`.padEnd(24) + `${cells[0]}        ${cells[1]}       ${cells[2]}       ${cells[3]}`);
   }
+  lines.push('', `a token made for        ${TOKEN_SCOPES.map((scope) => scope.padEnd(8)).join('')}`.trimEnd());
+  for (const action of [...Object.keys(SUBMISSION_ACTIONS), ...Object.keys(ACCOUNT_ACTIONS)] as (SubmissionAction | AccountAction)[])
+    lines.push(`  ${action}`.padEnd(32) + TOKEN_SCOPES.map((scope) => (beyondScope(action, token('member', scope)) ? '.' : 'Y').padEnd(8)).join('').trimEnd());
   return `${lines.join('\n')}\n`;
 }
 
@@ -83,5 +88,22 @@ describe('the matrix of actor, action and state', () => {
     if (!granted.ok) throw new Error('the author may lodge');
     expect(granted.value.states).toEqual(['draft', 'back-with-author']);
     expect(() => Object.assign(granted.value, { action: 'review.enter' })).toThrow();
+  });
+
+  it('lets a token do nothing without its scope, in the same words whether or not the submission exists', () => {
+    for (const action of Object.keys(SUBMISSION_ACTIONS) as SubmissionAction[])
+      for (const scope of TOKEN_SCOPES) {
+        const refused = beyondScope(action, token('T', scope));
+        if (!refused) continue;
+        expect(may(action, token('T', scope), factsIn('draft', { authorship: 'author' }))).toEqual({ ok: false, error: refused });
+        expect(may(action, token('T', scope), null)).toEqual({ ok: false, error: refused });
+      }
+  });
+
+  it('lets no token act as editor or administrator, nor make tokens or declare anything in its owner’s name', () => {
+    const all = token('T', ...TOKEN_SCOPES);
+    for (const action of ['review.take', 'review.invite', 'review.enter', 'review.send-back', 'review.set-aside', 'review.see-identities', 'review.begin', 'review.hold', 'record.strike', 'review.answer-invitation', 'submission.confirm-authorship', 'submission.manage-people'] as const)
+      for (const part of [{}, { authorship: 'author' }, { referee: 'invited' }] as const) for (const state of SUBMISSION_STATES) expect(may(action, all, factsIn(state, part)).ok, `${action} ${state}`).toBe(false);
+    for (const action of ['account.manage-tokens', 'account.read-own', 'queue.read', 'admin.read-jobs', 'admin.manage-people'] as const) expect(mayGenerally(action, all).ok, action).toBe(false);
   });
 });

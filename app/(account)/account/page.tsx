@@ -38,6 +38,9 @@ export default async function Account() {
             <p className="mt-3 text-ui"><Link href="/forgotten-password" className="inline-flex min-h-8 items-center">I do not know the present one</Link></p>
           </div>
         </Group>
+        <Group id="tokens" title="Tokens" hint="For scripts that act for you at the interface.">
+          <p className="text-ui"><Link href="/account/tokens" className="inline-flex min-h-8 items-center">Your tokens, their scopes and their last use</Link></p>
+        </Group>
         <Group id="session" title="This session" hint="Ends by itself after 12 hours without use, and after 7 days in any case.">
           <SignOutButton />
         </Group>

@@ -19,6 +19,6 @@ export async function recordAudit(tx: Transaction, line: AuditLine): Promise<voi
     action: line.action,
     subjectKind: line.subjectKind,
     subjectId: line.subjectId,
-    details: line.details ?? {},
+    details: { ...line.details, ...(line.actor.kind === 'token' && { tokenId: line.actor.tokenId }) },
   });
 }

@@ -10,7 +10,7 @@ import type { VariationList, VariationView } from './variation-view';
 
 /** One's own variations of a submission, the newest first. */
 export function listVariations(actor: Actor, submissionId: string): Promise<Outcome<VariationList>> {
-  return readSubmission({ actor, action: 'submission.vary', submissionId }, async ({ reader, facts }) => {
+  return readSubmission({ actor, action: 'submission.view-variations', submissionId }, async ({ reader, facts }) => {
     const userId = userIdOf(actor) ?? '';
     const rows = await readVariations(reader, submissionId, userId);
     const counts = await countVariations(reader, submissionId, userId, 24);

@@ -45,6 +45,7 @@ export const DOORS: readonly { readonly from: string; readonly to: string; reado
   { from: 'db/schema/', to: 'lib/badges/', why: 'the same' },
   { from: 'lib/worker/main', to: 'lib/tools/process', why: 'the manners of a supervised process are written once' },
   { from: 'lib/signer/main', to: 'lib/tools/process', why: 'the same' },
+  { from: 'lib/http/read-input', to: 'lib/claims/pointer', why: 'one spelling of a JSON Pointer and of what was seen' },
   { from: 'lib/services/accounts/', to: 'lib/auth/', why: 'accounts are the one noun whose verbs the sign-in library half owns' },
 ];
 

@@ -13,5 +13,5 @@ export const POST = defineRoute({
   body: 'stream',
   rate: { points: 60, perS: 3600 },
   status: 201,
-  handle: ({ actor, request }) => uploadFolder(actor, request),
+  handle: ({ actor, request, parts }) => uploadFolder(actor, request, parts),
 });

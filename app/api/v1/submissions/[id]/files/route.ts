@@ -12,7 +12,7 @@ export const POST = defineRoute({
   params: idParam,
   body: 'stream',
   status: 201,
-  handle: ({ actor, params, request }) => uploadFiles(actor, params.id, request),
+  handle: ({ actor, params, request, parts }) => uploadFiles(actor, params.id, request, parts),
 });
 
 export const DELETE = defineRoute({
