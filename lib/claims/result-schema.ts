@@ -15,6 +15,7 @@ const point = z.looseObject({
   apart: nullable,
   verdict,
   components: z.record(z.string(), nullable).optional(),
+  settings: z.record(z.string(), z.unknown()).optional(),
 });
 
 const finding = z.looseObject({

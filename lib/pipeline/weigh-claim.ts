@@ -58,6 +58,7 @@ function resultPoint({ claimed, measured, verdict }: Weighed): ResultPoint {
     routes: { A: number(measured.routes.A), B: number(measured.routes.B) },
     apart: number(verdict.apart),
     verdict: verdict.word,
+    ...(measured.settings ? { settings: { ...measured.settings } } : {}),
     ...(measured.components ? { components: Object.fromEntries(Object.entries(measured.components).map(([name, value]) => [name, number(value)])) } : {}),
   };
 }

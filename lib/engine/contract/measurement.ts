@@ -21,6 +21,8 @@ export interface MeasuredPoint {
   /** U = 2 u_c of the computation alone (E01, E02, E17, rounding of the input). */
   readonly expandedUncertainty: number | null;
   readonly components?: Readonly<Record<string, number | null>>;
+  /** Settings that nobody swept and that still took another value here than at other points, such as the upper edge at this mass. */
+  readonly settings?: Readonly<Record<string, unknown>>;
   /** Lower bound only, and the like: qualifiers the verdict prints. */
   readonly remarks?: readonly string[];
 }
@@ -29,6 +31,8 @@ export interface MeasuredPoint {
 export interface Figure {
   readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux';
   readonly title: string;
+  /** The point that is drawn, of a sweep; absent where the figure is of all points. */
+  readonly at?: Readonly<Record<string, number>>;
   readonly x: { readonly label: string; readonly unit: string; readonly scale: 'linear' | 'log'; readonly values: readonly number[] };
   readonly series: readonly FigureSeries[];
 }

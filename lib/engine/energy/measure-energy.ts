@@ -31,6 +31,12 @@ function measuredPoint({ at, norm }: PreparedPoint, { a, expanded }: ByRouteA, b
   return { at, value, routes: { A: value, B: b === null ? null : b.energy / norm }, expandedUncertainty: expanded / norm, components };
 }
 
+/** A floor that nobody declared is read at each start: a point that is read alone needs its own. */
+function ownFloor({ settings, over }: MeasureRequest, points: readonly PreparedPoint[], { settings: here }: PreparedPoint): Pick<MeasuredPoint, 'settings'> {
+  const differ = points.some((point) => point.settings.floor !== points[0]!.settings.floor);
+  return differ && settings.integrationFloor === undefined && over?.setting !== 'integrationFloor' ? { settings: { integrationFloor: here.floor } } : {};
+}
+
 const noStart = (name: string): Finding =>
   stop('engine/modes-missing', name, `Energy before the start is to be added, but ${name} has no (2,2) mode, or fewer than three samples of it after the start, from which to read the starting frequency.`, 'Supply the (2,2) mode or declare includeEnergyBeforeStart: false.');
 
@@ -100,7 +106,7 @@ function measurePoints(request: MeasureRequest, watch: Watch, completed: Complet
   if (findings.some(({ level }) => level === 'stops-lodging')) return notComputable(findings, ats);
   const { record, settings, norm } = point;
   return {
-    points: points.map((each, i) => measuredPoint(each, byA[i]!, byB.get(i) ?? null)),
+    points: points.map((each, i) => ({ ...measuredPoint(each, byA[i]!, byB.get(i) ?? null), ...ownFloor(request, points, each) })),
     budget: energyBudget(record, settings, a, store, digits, norm),
     findings,
     ...settingsUsed(settings, request.settings, request.over?.setting ?? null, completed.waveform, record),

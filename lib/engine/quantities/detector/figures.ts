@@ -109,6 +109,7 @@ function waveformsFigure({ found, shown, worst }: FigureContext): Figure[] {
     {
       kind: 'waveforms',
       title: 'Strain in the detector around the peak',
+      at: point.at,
       x: { label: 'time', unit: 's', scale: 'linear', values: timesS },
       series,
     },
@@ -137,6 +138,7 @@ function integrandFigure({ walk, shown, worst }: FigureContext): Figure {
   return {
     kind: 'integrand',
     title: 'Where in the band the loudness comes from',
+    at: point.at,
     x: { label: 'frequency', unit: 'Hz', scale: 'log', values: f },
     series,
   };

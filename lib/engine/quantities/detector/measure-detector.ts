@@ -13,7 +13,7 @@ import { routeB } from '@/lib/engine/routes/b/route-b';
 import { detectorFigures } from './figures';
 import type { Evaluated, Recipe, RouteKit } from './recipe';
 import { findingsOf, stopsOf, valueStops } from './stops';
-import { usedSettings } from './used-settings';
+import { settingsByPoint, usedSettings, type SettingsContext } from './used-settings';
 
 /** What a quantity of one detector is, beside its recipe. */
 export interface DetectorQuantity {
@@ -132,6 +132,8 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
     error: errors.get(worst)!,
     store,
   });
+  const inUse = settingsContext(walk, shown);
+  const own = settingsByPoint(inUse);
   const points = found.map((here, i): MeasuredPoint => {
     const remarks = remarksOf(walk, here, shown[i]!);
     const components = { ...here.components, ...recipe.alsoShown?.(requests[i]!, store) };
@@ -141,18 +143,16 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
       routes: { A: values[i]!, B: finiteOrNull(byB.get(i)?.value) },
       expandedUncertainty: finiteOrNull(bars[i]),
       ...(Object.keys(components).length === 0 ? {} : { components: finiteComponents(components) }),
+      ...(Object.keys(own[i]!).length === 0 ? {} : { settings: own[i]! }),
       ...(remarks.length > 0 ? { remarks } : {}),
     };
   });
-  const { a, b } = requests[0]!;
-  const used = usedSettings({
-    points: shown,
-    waveforms: [a, ...(b && b !== a ? [b] : [])],
-    traits: requests[0]!.traits,
-    allowed: quantity.settings,
-    swept: request.over?.setting ?? null,
-  });
   step(watch, 0.97, 'figures');
   const figures = request.withFigures ? detectorFigures({ walk, found, shown, worst, points }) : [];
-  return { points, budget, findings: findingsOf(quantity, requests, found), ...used, routeBPoints, figures };
+  return { points, budget, findings: findingsOf(quantity, requests, found), ...usedSettings(inUse), routeBPoints, figures };
+}
+
+function settingsContext({ quantity, request, requests }: Walk, shown: readonly DetectorPoint[]): SettingsContext {
+  const { a, b, traits } = requests[0]!;
+  return { points: shown, waveforms: [a, ...(b && b !== a ? [b] : [])], traits, allowed: quantity.settings, swept: request.over?.setting ?? null };
 }

@@ -83,11 +83,13 @@ function rowsOf(context: SettingsContext): Row[] {
   ];
 }
 
+const same = (a: unknown, b: unknown): boolean => a === b || JSON.stringify(a) === JSON.stringify(b);
+
 /** One value where all points agree; else the range that the points span. */
 function shownValue(row: Row, points: readonly DetectorPoint[]): unknown {
   const values = points.map(row.value);
   const first = values[0];
-  if (values.every((value) => value === first || JSON.stringify(value) === JSON.stringify(first))) return first;
+  if (values.every((value) => same(value, first))) return first;
   const numbers = values.filter((value) => typeof value === 'number');
   return numbers.length === values.length ? { from: Math.min(...numbers), to: Math.max(...numbers) } : values;
 }
@@ -115,4 +117,18 @@ export function usedSettings(context: SettingsContext): { settings: UsedSetting[
   // A file's own mass or distance was not assumed by us.
   const kept = settings.filter(({ name, standing: how }) => !(how === 'assumed' && (name === 'totalMassMsun' || name === 'lMax')));
   return { settings: kept, assumed: rows.filter((row) => row.matters && standing(row) === 'assumed').map((row) => row.name) };
+}
+
+/**
+ * What each point took where points differ without a sweep of that setting: the settings above hold only the ends.
+ * Shape:  one entry a point, empty where all points agree.
+ * Units:  as the names say.
+ * Error:  none.
+ * Fails:  never.
+ * Source: a number that is printed alone has to name its own band.
+ */
+export function settingsByPoint(context: SettingsContext): Readonly<Record<string, unknown>>[] {
+  const { points, swept } = context;
+  const differing = rowsOf(context).filter((row) => row.used && row.name !== swept && !points.every((point) => same(row.value(point), row.value(points[0]!))));
+  return points.map((point) => Object.fromEntries(differing.map((row) => [row.name, row.value(point)])));
 }
