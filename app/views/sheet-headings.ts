@@ -5,6 +5,7 @@
 import type { ClaimHeading, ClaimedPoint } from '@/app/_ui/claim/record-view';
 import { headingOf } from '@/app/_ui/claim/claim-heading';
 import { parseClaimed } from '@/lib/claims/claimed';
+import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { quantities } from '@/lib/engine/quantities/registry';
 import type { ResultClaim } from '@/lib/pipeline/result';
 
@@ -46,7 +47,28 @@ function wordsOf(claim: Loose | undefined, sheet: SheetParts) {
   const noise = text(claim?.['noise']);
   const names = Object.values(of ?? {}).filter((name): name is string => typeof name === 'string');
   const files = [...names.flatMap((name) => filesIn(sheet.waveforms[name])), ...(noise ? filesIn(sheet.noise[noise]) : [])];
-  return { of, noise, ...(files.length > 0 ? { files: [...new Set(files)] } : {}) };
+  return { of, noise, ...(files.length > 0 ? { files: [...new Set(files)] } : {}), ...sourcesOf(claim, names, noise, sheet) };
+}
+
+/** What a printed number says of its data; a claim that the sheet does not hold gives nothing but whether it needs a curve. */
+function sourcesOf(claim: Loose | undefined, names: readonly string[], noise: string | null, sheet: SheetParts): Pick<ClaimHeading, 'waveforms' | 'noiseSource'> {
+  if (!claim) return {};
+  const needsNoise = quantities.get(text(claim['quantity']) ?? '')?.needsNoise ?? noise !== null;
+  return {
+    waveforms: names.map((name) => ({ name, files: filesIn(sheet.waveforms[name]) })),
+    noiseSource: needsNoise ? noiseSourceOf(noise, sheet) : null,
+  };
+}
+
+/** How our knowledge of a citation came about stands on the methods page, not in what is printed. */
+const inPrint = (source: string): string => source.replace(/ \([^()]*from memory\)/, '');
+
+function noiseSourceOf(noise: string | null, sheet: SheetParts): ClaimHeading['noiseSource'] {
+  const declared = noise === null ? undefined : sheet.noise[noise];
+  const curve = builtInCurves.find(({ id }) => id === declared?.['curve']);
+  if (curve) return { kind: 'built-in', id: curve.id, title: curve.title, source: inPrint(curve.source), fHighHz: curve.fHighHz };
+  const file = text(declared?.['file']);
+  return noise !== null && file !== null ? { kind: 'file', name: noise, file } : undefined;
 }
 
 /** Headings before any run: all from the sheet, complete or not. */
@@ -64,5 +86,9 @@ export const noSheet: SheetParts = { waveforms: {}, noise: {}, claims: [] };
 
 /** Headings of what was computed; the sheet adds the names of waveforms and curve. */
 export function headingsOfResult(claims: readonly Omit<ResultClaim, 'candidates'>[], sheet: SheetParts): readonly ClaimHeading[] {
-  return claims.map((claim) => headingOf(claim, quantities.get(claim.quantity) ?? null, wordsOf(sheet.claims.find((c) => c['id'] === claim.id), sheet)));
+  return claims.map((claim) => {
+    const quantity = quantities.get(claim.quantity) ?? null;
+    const words = wordsOf(sheet.claims.find((c) => c['id'] === claim.id), sheet);
+    return headingOf(claim, quantity, quantity?.needsNoise === false ? { ...words, noiseSource: null } : words);
+  });
 }

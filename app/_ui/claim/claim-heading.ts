@@ -10,6 +10,8 @@ interface SheetWords {
   readonly noise?: string | null;
   readonly quote?: string | null;
   readonly files?: readonly string[];
+  readonly waveforms?: ClaimHeading['waveforms'];
+  readonly noiseSource?: ClaimHeading['noiseSource'];
 }
 
 const named = (of: SheetWords['of']): string => {
@@ -43,6 +45,8 @@ export function headingOf(claim: Omit<ResultClaim, 'candidates'>, quantity: Quan
     quote: sheet.quote ?? null,
     points: claim.points.map((point) => ({ at: point.at, printed: point.printed, tolerance: point.tolerance })),
     files: sheet.files,
+    waveforms: sheet.waveforms,
+    noiseSource: sheet.noiseSource,
   };
 }
 

@@ -4,6 +4,10 @@ import { ClaimOpener, ClaimOpenState } from './claim-open';
 import { OpenedClaim } from './opened-claim';
 import { PointCells, type PointOnScreen } from './point-row';
 import { placeOf } from './claim-heading';
+import { CopyNumber } from './print/copy-number';
+import { latexRow, latexTable } from './print/latex-row';
+import { printSourceOf } from './print/print-source';
+import { printedSentence } from './print/printed-sentence';
 import type { ClaimHeading, RecordSlots, RecordView } from './record-view';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import { visiblePoints } from './visible-points';
@@ -43,6 +47,13 @@ function ClaimName({ heading, context, openable, controls, more }: { readonly he
   );
 }
 
+/** The number as a sentence and as a row, ready to be copied beside it; a summary has no such buttons. */
+function copyOf(heading: ClaimHeading, claim: ResultClaim | undefined, point: PointOnScreen, view: RecordView) {
+  if (!claim || !point.result) return null;
+  const printable = { heading, claim, point: point.result, source: printSourceOf(view) };
+  return <CopyNumber about={point.place ? `${heading.id} at ${point.place}` : heading.id} sentence={printedSentence(printable)} row={latexTable([latexRow(printable)])} />;
+}
+
 /** One claim: a tbody with a row for each point and, when opened, everything behind the number. */
 export function ClaimRows({ heading, view, slots, initiallyOpen, closed }: ClaimRowsProps) {
   const claim = view.result?.claims.find((c) => c.id === heading.id);
@@ -54,7 +65,7 @@ export function ClaimRows({ heading, view, slots, initiallyOpen, closed }: Claim
   const rows = points.map((point, i) => (
     <tr key={point.index} id={i === 0 ? heading.id : undefined} role="row" className={single ? undefined : i === 0 ? 'pt first' : 'pt'}>
       {i === 0 && <th className="c" role="rowheader" scope={single ? 'row' : 'rowgroup'} rowSpan={single ? undefined : points.length}>{name}</th>}
-      <PointCells heading={heading} claim={claim ?? null} point={point} sweep={!single} first={i === 0} waiting={claim ? null : waitingWord(view, heading.id)} slots={slots} />
+      <PointCells heading={heading} claim={claim ?? null} point={point} sweep={!single} first={i === 0} waiting={claim ? null : waitingWord(view, heading.id)} slots={slots} copy={closed ? null : copyOf(heading, claim, point, view)} />
       {i === 0 && <CoverageCell coverage={claim?.coverage ?? null} rowSpan={single ? undefined : points.length} />}
     </tr>
   ));

@@ -10,6 +10,9 @@ import { FileList } from './file-list';
 import { FindingItem } from './finding-item';
 import { PlotsOfClaim } from './plots-of-claim';
 import { PointTable } from './point-table';
+import { CopyRows } from './print/copy-rows';
+import { LATEX_COLUMNS, latexRow, rowsOfSweep } from './print/latex-row';
+import { printSourceOf } from './print/print-source';
 import type { ClaimHeading, RecordSlots, RecordView } from './record-view';
 import { RouteTable } from './route-table';
 import { RunLog } from './run-log';
@@ -32,6 +35,11 @@ export function Part({ title, children }: { readonly title: ReactNode; readonly 
   );
 }
 
+function AllRows({ heading, claim, view }: Pick<OpenedClaimProps, 'heading' | 'claim' | 'view'>) {
+  const source = printSourceOf(view);
+  return <CopyRows claimId={claim.id} columns={LATEX_COLUMNS} {...rowsOfSweep(claim.points.map((point) => latexRow({ heading, claim, point, source })))} />;
+}
+
 /** Everything behind a number: what was declared at the left, what came of it at the right, then across both. */
 export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimProps) {
   const figures = view.figures[claim.id] ?? [];
@@ -44,6 +52,7 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
         <td className="c" role="cell" colSpan={4}><div className="grid gap-6">
           {slots.action && <div>{slots.action(claim.id)}</div>}
           <Part title="Settings"><SettingTable claimId={claim.id} settings={claim.settings} /></Part>
+          {claim.points.length > 1 && <Part title="To print"><AllRows heading={heading} claim={claim} view={view} /></Part>}
           {heading.quote && <Part title="As the text says"><p className="max-w-[52ch] border-l-2 border-control pl-3 font-serif italic">“{heading.quote}”</p></Part>}
           {heading.formula && (
             <Part title="Formula as used">

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
 import { decimalsForReading, printedDecimals, roundUpUncertainty } from '../math/format-uncertainty';
 import { numberParts } from '../math/format-number';
@@ -25,6 +26,8 @@ interface PointCellsProps {
   /** What stands in the verdict's place while there is no result. */
   readonly waiting: string | null;
   readonly slots: RecordSlots;
+  /** Buttons that copy this number. */
+  readonly copy: ReactNode;
 }
 
 /** The number in what the author printed: `36.3(2)`, `> 0.999`, `0.5 ± 0.1`. */
@@ -54,7 +57,7 @@ function readingStyle(point: PointOnScreen, ln: boolean): ReadingStyle {
 }
 
 /** Cells of one point after the claim's name: where, claimed, tolerance | value, U, apart, verdict. */
-export function PointCells({ heading, claim, point, sweep, first, waiting, slots }: PointCellsProps) {
+export function PointCells({ heading, claim, point, sweep, first, waiting, slots, copy }: PointCellsProps) {
   const { claimed, result } = point;
   const u = result?.expandedUncertainty ?? null;
   const style = readingStyle(point, heading.scale === 'ln');
@@ -70,6 +73,7 @@ export function PointCells({ heading, claim, point, sweep, first, waiting, slots
       <td className="r n" role="cell" data-l="Recomputed">
         <Recomputed point={point} unit={heading.unit} style={style} waiting={waiting} />
         {result && slots.anchor?.(heading.id, point.index)}
+        {copy}
       </td>
       <td className="r n lo" role="cell" data-l="U (k = 2)">{result && result.value !== null ? <Uncertainty u={u} unit={heading.unit} /> : <NoNumber />}</td>
       <td className="r n lo" role="cell" data-l="Apart by"><Apart heading={heading} point={point} style={style} /></td>

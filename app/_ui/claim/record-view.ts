@@ -25,6 +25,15 @@ export interface ClaimedPoint {
   readonly tolerance: number | null;
 }
 
+/** A name of the sheet and the files that stand behind it. */
+export interface WaveformSource {
+  readonly name: string;
+  readonly files: readonly string[];
+}
+export type NoiseSource =
+  | { readonly kind: 'built-in'; readonly id: string; readonly title: string; readonly source: string; readonly fHighHz: number }
+  | { readonly kind: 'file'; readonly name: string; readonly file: string };
+
 /** What sheet and quantity table say about a claim: enough to draw its row before a run. */
 export interface ClaimHeading {
   readonly id: string;
@@ -44,6 +53,10 @@ export interface ClaimHeading {
   readonly points: readonly ClaimedPoint[];
   /** Names of the files this claim uses; all files of the sheet when absent. */
   readonly files?: readonly string[];
+  /** Absent where the sheet is out of reach. */
+  readonly waveforms?: readonly WaveformSource[];
+  /** Null where the quantity needs none; absent where the sheet is out of reach. */
+  readonly noiseSource?: NoiseSource | null;
 }
 
 export type RunView =
@@ -100,6 +113,8 @@ export interface RecordView {
   readonly figures: FiguresByClaim;
   /** Address that answers `{ figures: FiguresByClaim }`. */
   readonly figuresHref?: string | null;
+  /** Whole address at which a record is published. */
+  readonly address?: string | null;
   /** Run log by claim id; `''` for the whole run. */
   readonly logs: Readonly<Record<string, string>>;
   /** Markdown with maths. */

@@ -34,5 +34,5 @@ export default async function PublishedRecordPage({ params }: RecordProps) {
   const record = orNotFound(await readRecord(id));
   const lodged = await loadBehind(await loadActor(), record.submissionId, record.document.revision);
   const slots = { actions: <RecordActions record={record} />, aside: <BadgeCard record={record} /> };
-  return <RecordPage view={recordAsView(record, lodged)} trail={{ href: '/register', label: 'Register' }} slots={slots} />;
+  return <RecordPage view={{ ...recordAsView(record, lodged), address: `${record.document.domain}/records/${record.id}` }} trail={{ href: '/register', label: 'Register' }} slots={slots} />;
 }
