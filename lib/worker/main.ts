@@ -72,7 +72,7 @@ async function start(env: WorkerEnv): Promise<() => Promise<void>> {
   });
   const room: HandlerRoom = { database, store: createS3Store(env), mail: env, compute: runSheet, signal: stopping.signal };
   const others = (Object.keys(TASKS) as TaskName[]).filter((name) => name !== 'run-submission');
-  const cron = HANDLERS['deliver-outbox'] ? '* * * * * deliver-outbox ?jobKey=outbox-sweep&max=1' : '';
+  const cron = ['* * * * * deliver-outbox ?jobKey=outbox-sweep&max=1', '17 * * * * clear-uploads ?jobKey=uploads-sweep&max=1'].join('\n');
   const runners = [await startPool(database, liveness, tasksOf(['run-submission'], room), CONCURRENT_RUNS)];
   const otherTasks = tasksOf(others, room);
   if (Object.keys(otherTasks).length > 0) runners.push(await startPool(database, liveness, otherTasks, 1, cron));

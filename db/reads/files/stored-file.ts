@@ -9,6 +9,13 @@ export async function findStorageKey(reader: Reader, sha256: string): Promise<st
   return row?.key;
 }
 
+/** Bytes that this submission already holds, whatever name they had. */
+export async function findStoredFile(reader: Reader, submissionId: string, by: { readonly fileId: string } | { readonly sha256: string }) {
+  const is = 'fileId' in by ? eq(storedFiles.id, by.fileId) : eq(storedFiles.sha256, by.sha256);
+  const [row] = await reader.select({ bytes: storedFiles.bytes, sha256: storedFiles.sha256, storageKey: storedFiles.storageKey }).from(storedFiles).where(and(eq(storedFiles.submissionId, submissionId), is));
+  return row;
+}
+
 /** A file of this submission and the revisions that use it. */
 export const listFileUses = (reader: Reader, submissionId: string, fileId: string) =>
   reader

@@ -1,11 +1,11 @@
-import { database, type Reader } from '@/db/client';
+import { database, type Reader, type Transaction } from '@/db/client';
 import { findSubmissionFacts } from '@/db/reads/submissions/submission-facts';
 import { findRevision, listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import { getSubmissionHead } from '@/db/reads/submissions/submission-head';
 import { storeFile, type UploadedFile } from '@/db/writes/files/store-file';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
-import { may } from '@/lib/policy/grant';
+import { may, type SubmissionGrant } from '@/lib/policy/grant';
 import { actOnSubmission } from '@/lib/services/act';
 import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import type { FileView } from '@/lib/services/submissions/submission-view';
@@ -36,7 +36,7 @@ export async function mayAdd(actor: Actor, submissionId: string, name: string): 
   return row ? roomFor(database(), row, name) : { ok: false, error: NOT_FOUND };
 }
 
-export async function roomFor(reader: Reader, row: RevisionRow, name: string): Promise<Outcome<null>> {
+export export async function roomFor(reader: Reader, row: RevisionRow, name: string): Promise<Outcome<null>> {
   const files = await listRevisionFiles(reader, row.id);
   const clash = files.find((f) => f.name !== name && f.name.normalize('NFC').toLowerCase() === name.normalize('NFC').toLowerCase());
   if (clash) return fail('invalid', `${name} and ${clash.name} differ in letter case alone, which some computers cannot keep apart. Rename one.`);
@@ -44,7 +44,8 @@ export async function roomFor(reader: Reader, row: RevisionRow, name: string): P
   return ok(null);
 }
 
-const recordFile = (actor: Actor, submissionId: string, file: UploadedFile): Promise<Outcome<FileView>> =>
+/** `also` is written in the same transaction. */
+export const recordFile = (actor: Actor, submissionId: string, file: UploadedFile, also: (tx: Transaction, grant: SubmissionGrant<'submission.edit'>) => Promise<void> = async () => undefined): Promise<Outcome<FileView>> =>
   actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
     const row = await currentRevision(tx, submissionId);
@@ -52,6 +53,7 @@ const recordFile = (actor: Actor, submissionId: string, file: UploadedFile): Pro
     const room = await roomFor(tx, row, file.name);
     if (!room.ok) return room;
     const { id } = await storeFile(tx, grant, { submissionId, revisionId: row.id }, file);
+    await also(tx, grant);
     note({ file: file.name, sha256: file.sha256, bytes: file.bytes });
     return ok({ id, name: file.name, bytes: file.bytes, sha256: file.sha256 });
   });

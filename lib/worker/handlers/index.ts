@@ -1,4 +1,5 @@
 import type { TaskName } from '@/lib/jobs/tasks';
+import { clearUploads } from './clear-uploads';
 import { deliverOutbox } from './deliver-outbox';
 import type { Handler } from './handler';
 import { runSubmission } from './run-submission';
@@ -7,4 +8,5 @@ import { runSubmission } from './run-submission';
 export const HANDLERS: Readonly<Record<TaskName, Handler>> = {
   'run-submission': runSubmission,
   'deliver-outbox': deliverOutbox,
+  'clear-uploads': clearUploads,
 };
