@@ -30,6 +30,8 @@ export function AuthForm({ path, button, busy, extra, next, done, children }: Au
     if (!answer.ok) {
       setProblem(answer.sentence);
       setState('idle');
+    } else if (answer.value['twoFactorRedirect']) {
+      window.location.assign(`/sign-in/second-factor?next=${encodeURIComponent(next ?? '/')}`);
     } else if (next) {
       // A whole page load: what was fetched ahead was fetched for a visitor.
       window.location.assign(next);

@@ -59,6 +59,7 @@ export function createAuth({ database: db, env, post, orcid }: AuthParts) {
     }),
     plugins: [secondFactor(), ...(orcid ? [orcidPlugin(orcid)] : [])],
     hooks: { after: challengeAfterProvider },
+    onAPIError: { errorURL: `${env.APP_URL}/sign-in` },
     account: {
       // ORCID vouches for an iD, not for an address, so no two accounts are ever joined by an address.
       accountLinking: { enabled: true, trustedProviders: [ORCID], allowDifferentEmails: true, disableImplicitLinking: true },

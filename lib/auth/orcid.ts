@@ -22,6 +22,8 @@ export function orcidClientOf(env: OrcidEnv): OrcidClient | null {
   return issuer && clientId && clientSecret ? { issuer, clientId, clientSecret } : null;
 }
 
+export const isOrcidConfigured = (env: OrcidEnv): boolean => orcidClientOf(env) !== null;
+
 interface OrcidProfile {
   readonly sub?: unknown;
   readonly name?: unknown;

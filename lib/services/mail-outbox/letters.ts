@@ -2,14 +2,19 @@ import { RULES_SENTENCE } from '@/lib/badges/cautions';
 import { quantities } from '@/lib/engine/quantities/registry';
 import { settingsTable } from '@/lib/engine/quantities/settings-table';
 import type { LetterNumber, LetterPoint } from '@/lib/reviews/letter';
+import type { OptionalLetter } from '@/lib/reviews/optional-letters';
 
 /** The texts that go out. Plain text, no picture and no link but to the desk: a letter tells its reader nothing about anybody else. */
 export interface Letter {
   readonly subject: string;
   readonly body: string;
+  /** For letters that one may do without; whoever does gets none. */
+  readonly kind?: OptionalLetter;
 }
 
 const sign = 'Counterfoil';
+/** How to have fewer of these, for letters that one may do without. */
+const optional = (kind: OptionalLetter, { subject, body }: Letter): Letter => ({ subject, kind, body: `${body}\nYour account says which letters you get.\n` });
 const write = (subject: string, ...paragraphs: readonly string[]): Letter => ({ subject, body: `${paragraphs.filter((p) => p !== '').join('\n\n')}\n\n${sign}\n` });
 
 export const invitationLetter = (facts: { readonly name: string; readonly title: string; readonly editor: string; readonly answerBy: string; readonly url: string }): Letter =>
@@ -26,15 +31,15 @@ const OWED = {
 } as const;
 
 export const reminderLetter = (facts: { readonly name: string; readonly title: string; readonly owes: keyof typeof OWED; readonly url: string }): Letter =>
-  write(`A reminder: “${facts.title}”`, `Dear ${facts.name},`, `This is about “${facts.title}”. ${OWED[facts.owes]}`, facts.url);
+  optional('reminder', write(`A reminder: “${facts.title}”`, `Dear ${facts.name},`, `This is about “${facts.title}”. ${OWED[facts.owes]}`, facts.url));
 
 export const reportReceivedLetter = (facts: { readonly name: string; readonly title: string; readonly slot: string; readonly round: number; readonly allIn: boolean; readonly url: string }): Letter =>
-  write(
+  optional('report-received', write(
     `A report on “${facts.title}” is in`,
     `Dear ${facts.name},`,
     `Referee ${facts.slot} has handed in the report of round ${facts.round} on “${facts.title}”. ${facts.allIn ? 'All reports of this round are in; the submission waits for your decision.' : 'Other reports of this round are still out.'}`,
     facts.url,
-  );
+  ));
 
 const OPENINGS = {
   enter: 'The editor has decided to enter it in the register. The server now hashes your files once more and signs the record; it then stands at the address below.',
@@ -84,6 +89,12 @@ export const decisionLetter = (facts: DecisionLetterFacts): Letter =>
 
 export const verifyAddressLetter = (facts: { readonly name: string; readonly url: string }): Letter =>
   write('Confirm your address', `Dear ${facts.name},`, `Open this link within a day to confirm that this address is yours:\n${facts.url}`, 'If you did not ask for an account, leave this letter alone; nothing will happen.');
+
+export const confirmAddressLetter = (facts: { readonly name: string; readonly url: string }): Letter =>
+  write('Confirm your address', `Dear ${facts.name},`, `Somebody signed in with ORCID and named this address as theirs. Open this link within a day, in the browser in which you are signed in, to confirm it:\n${facts.url}`, 'If that was not you, leave this letter alone; nothing will happen.');
+
+export const addressTakenLetter = (facts: { readonly url: string }): Letter =>
+  write('This address has an account already', 'Somebody signed in with ORCID and named this address as theirs. An account here has it already, and the two were not joined.', `If that was you: on the page where you gave the address, choose “I have an account already”. Then sign in with your password and link ORCID on your account page:\n${facts.url}`, 'If that was not you, leave this letter alone; nothing will happen.');
 
 export const resetPasswordLetter = (facts: { readonly name: string; readonly url: string }): Letter =>
   write('Choose a new password', `Dear ${facts.name},`, `Open this link within an hour to choose a new password. All your sessions end when you do.\n${facts.url}`, 'If you did not ask for this, leave this letter alone; your password stays.');
