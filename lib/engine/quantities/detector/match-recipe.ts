@@ -1,3 +1,4 @@
+import { houseValues } from '@/lib/engine/contract/house-values';
 import { detectorPoint, type DetectorPoint } from '@/lib/engine/conditioning/detector-settings';
 import type { DetectorRoute, MatchOutcome, MatchRequest, Side } from '@/lib/engine/contract/route';
 import type { MaximiseOver } from '@/lib/engine/contract/settings';
@@ -48,7 +49,7 @@ const placement = (point: DetectorPoint, outcome: MatchOutcome): Record<string, 
   ...(outcome.massFactor === undefined || point.massMsun === null ? {} : { templateMassMsun: point.massMsun * outcome.massFactor }),
 });
 
-const traits = () => ({ maximise: ['time', 'phase'], loudness: false, absolute: false, needsDistance: false, horizon: false }) as const;
+const traits = () => ({ maximise: houseValues.maximise, loudness: false, absolute: false, needsDistance: false, horizon: false }) as const;
 
 /** Builds a recipe on one maximised product; `read` takes the value and components from its outcome. */
 function recipeOf(
@@ -99,7 +100,7 @@ export const mismatchRecipe: Recipe = recipeOf(
   (value) => MISMATCH_FLOOR + ROUNDING_FLOOR * Math.abs(value),
 );
 
-const parametersOf = (point: DetectorPoint): number => point.declared.parameters ?? 1;
+const parametersOf = (point: DetectorPoint): number => point.declared.parameters ?? houseValues.parameters;
 const distinguishable = (point: DetectorPoint, mismatch: number): number => Math.sqrt(parametersOf(point) / (2 * mismatch));
 
 export const distinguishabilityRecipe: Recipe = recipeOf(

@@ -90,9 +90,9 @@ export function measureDetector(quantity: DetectorQuantity, request: MeasureRequ
   if (request.inputs.of.a === undefined || request.inputs.noise === null) return notComputable([], ats);
   step(watch, 0, 'preparing the waveforms');
   const requests = requestsOf(quantity, request);
-  const stops = stopsOf(quantity, request, requests);
-  if (stops.length > 0) return notComputable([...stops, ...findingsOf(quantity, requests, null)], ats);
   const store = new SpectrumStore();
+  const stops = stopsOf(quantity, request, requests, store);
+  if (stops.length > 0) return notComputable([...stops, ...findingsOf(quantity, requests, null)], ats);
   const walk: Walk = { quantity, request, requests, store, kitA: kitOf(houseNumerics, store) };
   const all = requests.map((_, i) => i);
   const byA = evaluateAt(walk, walk.kitA, all, watch, [0.02, 0.4], 'route A');

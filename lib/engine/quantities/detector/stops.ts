@@ -4,6 +4,8 @@ import type { Finding } from '@/lib/engine/contract/finding';
 import type { MeasureRequest } from '@/lib/engine/contract/quantity';
 import type { Side } from '@/lib/engine/contract/route';
 import * as look from '@/lib/engine/findings/detector-findings';
+import { evenLines, MOST_EVEN_LINES } from '@/lib/engine/routes/a/bin-plan';
+import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
 import { powerInResponse } from './loudness';
 import type { DetectorQuantity, Walk } from './measure-detector';
@@ -87,6 +89,16 @@ function apartStop(point: DetectorPoint): Finding | null {
   return stop('engine/records-far-apart', b.waveform.name, text, 'Shift one of the files, or claim a match, which moves b in time.');
 }
 
+/** Products of two waveforms stand on one even grid; a shift is sought on all of it. */
+function tooManyLines({ a, b, band, maximise }: DetectorPoint, needsPair: boolean, store: SpectrumStore): Finding | null {
+  if (b === null || !needsPair) return null;
+  const lines = evenLines({ sides: [a, b], band, absoluteTimes: !maximise.includes('time') }, store);
+  if (!(lines > MOST_EVEN_LINES)) return null;
+  const file = (a.waveform.domain === 'frequency' ? a : b).waveform.name;
+  const text = `Between ${look.short(band.fLowHz, 6)} and ${look.short(band.fHighHz, 6)} Hz the product of ${a.waveform.name} and ${b.waveform.name} would need ${look.short(lines)} evenly spaced frequencies; at most ${MOST_EVEN_LINES} are held.`;
+  return stop('engine/too-many-lines', file, text, 'Raise fLowHz or lower fHighHz, or attach the waveform as a time series.');
+}
+
 function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | null)[] {
   const { maximise, response } = point;
   const lacking = roleWaveforms(request).find((c) => c.given.content.kind !== 'modes');
@@ -112,7 +124,7 @@ function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | 
   ];
 }
 
-function pointStops(request: PointRequest): Finding[] {
+function pointStops(request: PointRequest, store: SpectrumStore): Finding[] {
   const point = detectorPoint(request);
   const { band } = point;
   const c = roleWaveforms(request);
@@ -133,6 +145,7 @@ function pointStops(request: PointRequest): Finding[] {
     ...maximiseStops(point, request),
     ...shortStops(request),
     apartStop(point),
+    tooManyLines(point, !request.traits.loudness, store),
     request.traits.horizon ? null : empty,
     ...c.map((waveform, i) => look.nothingSeen(waveform, sides[i] ?? sides[0]!, harmonicSize(sides[i] ?? sides[0]!), allSky)),
   ];
@@ -145,10 +158,10 @@ const distinct = (findings: readonly Finding[]): Finding[] => [
 ];
 
 /** What makes a claim impossible to compute, read off before any transform; one message for each cause. */
-export function stopsOf(_quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[]): Finding[] {
+export function stopsOf(_quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[], store: SpectrumStore): Finding[] {
   // The curve is one for all points, and reading it takes as long as a spectrum.
   const invalid = look.curveInvalid(requests[0]!.noise);
-  const all = invalid === null ? distinct(requests.flatMap(pointStops)) : [invalid];
+  const all = invalid === null ? distinct(requests.flatMap((request) => pointStops(request, store))) : [invalid];
   const seen = new Set<string>();
   return all.filter(({ code, where }) => !seen.has(`${code}|${where}`) && seen.add(`${code}|${where}`));
 }

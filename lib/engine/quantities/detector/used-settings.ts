@@ -1,3 +1,4 @@
+import { houseValues } from '@/lib/engine/contract/house-values';
 import { massMatters, type DetectorPoint, type DetectorTraits } from '@/lib/engine/conditioning/detector-settings';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import type { UsedSetting } from '@/lib/engine/contract/measurement';
@@ -64,7 +65,7 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'inclinationRad', value: (p) => p.a.inclinationRad, unit: 'rad', used: bySight, matters: true },
     { name: 'azimuthRad', value: (p) => p.a.azimuthRad, unit: 'rad', used: bySight, matters: true },
     { name: 'response', value: (p) => p.response, used: optimal, matters: true },
-    { name: 'modes', value: (p) => p.declared.modes ?? 'all', used: modes, matters: several },
+    { name: 'modes', value: (p) => p.declared.modes ?? houseValues.modes, used: modes, matters: several },
     { name: 'lMax', value: (p) => p.declared.lMax, used: declared.lMax !== undefined, matters: false },
     {
       name: 'average',
@@ -74,11 +75,11 @@ function rowsOf(context: SettingsContext): Row[] {
     },
     { name: 'detectors', value: (p) => p.detectors, used: traits.absolute, matters: true },
     { name: 'armAngleDeg', value: (p) => p.armAngleDeg, unit: '°', used: traits.absolute, matters: true },
-    { name: 'taper', value: (p) => p.declared.taper ?? 'auto', used: given.some((w) => w.domain === 'time'), matters: open },
+    { name: 'taper', value: (p) => p.declared.taper ?? houseValues.taper, used: given.some((w) => w.domain === 'time'), matters: open },
     { name: 'threshold', value: (p) => p.threshold, used: traits.horizon, matters: true },
     { name: 'cosmology', value: (p) => p.cosmology, unit: 'h0 in km/s/Mpc', used: expands, matters: true },
-    { name: 'parameters', value: (p) => p.declared.parameters ?? 1, used: context.allowed.includes('parameters'), matters: true },
-    { name: 'rateLaw', value: (p) => p.declared.rateLaw ?? 'euclidean', used: context.allowed.includes('rateLaw'), matters: true },
+    { name: 'parameters', value: (p) => p.declared.parameters ?? houseValues.parameters, used: context.allowed.includes('parameters'), matters: true },
+    { name: 'rateLaw', value: (p) => p.declared.rateLaw ?? houseValues.rateLaw, used: context.allowed.includes('rateLaw'), matters: true },
     { name: 'negativeM', value: () => 'mirror', used: waveforms.some((c) => c.mirrorAssumed), matters: true },
   ];
 }

@@ -20,6 +20,10 @@ const LAG_ROOM = 1.02;
 const LEAST_BINS = 64;
 /** A frequency-domain file says nothing finer than its own interpolation does. */
 const MOST_FILE_BINS = 1 << 18;
+/** A file that would need more even lines than this between zero and the band's upper edge is summed in pieces, or refused where a shift needs one grid. */
+export const MOST_EVEN_LINES = 1 << 21;
+/** Even lines below a band's lower edge, at least: a file's content varies as fast as its frequency does. */
+const LINES_BELOW = 8;
 /** Longest padding that an edge may ask for, as halvings of the first bins. */
 const MOST_EDGE_DOUBLINGS = 8;
 
@@ -78,7 +82,7 @@ export function spacing(request: PrepareRequest, store: SpectrumStore, numerics:
   const weigher = store.weigher(request.band.noise, numerics.noiseTableHalvings);
   const must = doublingsTo(lag, perUnit * Math.min((high - low) / LEAST_BINS, weigher.kinkResolutionHz(low, high, numerics.kinkChange)));
   const fromFile = request.sides.some((side) => side.waveform.domain === 'frequency');
-  const file = fromFile ? doublingsTo(lag, (perUnit * (high - low)) / MOST_FILE_BINS) : MOST_EDGE_DOUBLINGS;
+  const file = fromFile ? doublingsTo(lag, perUnit * Math.min((high - low) / MOST_FILE_BINS, low / LINES_BELOW)) : MOST_EDGE_DOUBLINGS;
   const learned = Math.max(extra, ...request.sides.map((side) => store.paddings(side.waveform)));
   const doublings = Math.max(must, Math.min(must + file, learned));
   let used = doublings + numerics.padDoublings;
@@ -91,6 +95,20 @@ export function spacing(request: PrepareRequest, store: SpectrumStore, numerics:
     mostDoublings: atCap ? doublings : must + file,
     lagStride: 2 ** used,
   };
+}
+
+/**
+ * Even lines from zero to the band's upper edge that a file in frequency asks for: by its lags and by where the band begins.
+ * Shape:  one number; 0 without such a file.
+ * Units:  lines.
+ * Error:  a measure, good to a factor.
+ * Fails:  never.
+ * Source: our rule.
+ */
+export function evenLines(request: PrepareRequest, store: SpectrumStore): number {
+  if (request.sides.every((side) => side.waveform.domain !== 'frequency')) return 0;
+  const { low, high } = contentBand(request.sides, request.band, store);
+  return high > low ? high * Math.max(longestLagS(request, store) * LAG_ROOM, LINES_BELOW / low) : 0;
 }
 
 function longestTransform(

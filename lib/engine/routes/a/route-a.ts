@@ -4,13 +4,21 @@ import { residualSum, shiftS, xOfShift, type Pair } from './alignment';
 import { channelsOf, power, realResponse } from './cross-spectrum';
 import { JointSearch, searchedIn, type Placement } from './joint-search';
 import { lineSpectrum, modeBank } from './mode-bank';
+import { piecesOf, type Piece } from './file-pieces';
 import { houseNumerics, type Numerics } from './numerics';
 import { prepare, type Prepared } from './prepare';
+import type { Content } from './side-spectra';
 import type { Spectrum } from './spectrum';
 import { SpectrumStore } from './spectrum-store';
 import type { BinWeights } from './bin-weights';
 
 const strainScale = (side: Side): number => side.strainPerUnit * side.secondsPerUnit;
+
+const preparePiece = ({ side, band, longestS }: Piece, store: SpectrumStore, numerics: Numerics, contents?: readonly Content[]): Prepared =>
+  prepare({ sides: [side], band, absoluteTimes: false, ...(longestS === undefined ? {} : { longestS }) }, store, numerics, contents);
+
+const sumOf = (grams: readonly ResponseGram[]): ResponseGram =>
+  grams.reduce((p, q) => ({ plusPlus: p.plusPlus + q.plusPlus, crossCross: p.crossCross + q.crossCross, plusCross: p.plusCross + q.plusCross }));
 
 function gramOf(s: Spectrum, weights: BinWeights, scale: number): ResponseGram {
   const plus = realResponse(s, 'plus');
@@ -89,20 +97,22 @@ function modePower(side: Side, band: Band, store: SpectrumStore, numerics: Numer
   if (content.kind !== 'modes') return Number.NaN;
   const scale = strainScale(side);
   return content.modes.reduce((sum, _, index) => {
-    const { spectra, weights } = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics, [{ kind: 'mode', index }]);
-    return sum + 2 * weights.dfHz * scale * scale * normOf(spectra[0]!, 'complex', weights);
+    return piecesOf(side, band, store).reduce((total, piece) => {
+      const { spectra, weights } = preparePiece(piece, store, numerics, [{ kind: 'mode', index }]);
+      return total + 2 * weights.dfHz * scale * scale * normOf(spectra[0]!, 'complex', weights);
+    }, sum);
   }, 0);
 }
 
+interface Sight {
+  readonly inclinationRad: number;
+  readonly azimuthRad: number;
+}
+
 /** Many lines of sight at one mass: the modes are transformed once and summed bin by bin. */
-function grams(
-  side: Side,
-  band: Band,
-  sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[],
-  store: SpectrumStore,
-  numerics: Numerics,
-): ResponseGram[] {
-  const prepared: Prepared = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics);
+function pieceGrams(piece: Piece, sights: readonly Sight[], store: SpectrumStore, numerics: Numerics): ResponseGram[] {
+  const { side, band } = piece;
+  const prepared = preparePiece(piece, store, numerics);
   const bank = modeBank(side, prepared.dF[0]!, band.fHighHz * side.secondsPerUnit, store, numerics);
   const { weights } = prepared;
   const last = weights.first + weights.values.length - 1;
@@ -110,6 +120,20 @@ function grams(
     const s = bank.length === 0 ? prepared.spectra[0]! : lineSpectrum(bank, inclinationRad, azimuthRad, weights.first, last);
     return gramOf(s, weights, strainScale(side));
   });
+}
+
+function grams(side: Side, band: Band, sights: readonly Sight[], store: SpectrumStore, numerics: Numerics): ResponseGram[] {
+  const pieces = piecesOf(side, band, store).map((piece) => pieceGrams(piece, sights, store, numerics));
+  return sights.map((_, i) => sumOf(pieces.map((piece) => piece[i]!)));
+}
+
+function lineGram(side: Side, band: Band, store: SpectrumStore, numerics: Numerics): ResponseGram {
+  return sumOf(
+    piecesOf(side, band, store).map((piece) => {
+      const { spectra, weights } = preparePiece(piece, store, numerics);
+      return gramOf(spectra[0]!, weights, strainScale(side));
+    }),
+  );
 }
 
 /**
@@ -125,10 +149,7 @@ export function createRouteA(numerics: Numerics = houseNumerics, store: Spectrum
     outcomeOf({ a, b, band, response, maximise: [], templateMassRange: [1, 1], rescale: (side) => side }, store, numerics).match;
   return {
     name: 'A',
-    gram: (side, band) => {
-      const { spectra, weights } = prepare({ sides: [side], band, absoluteTimes: false }, store, numerics);
-      return gramOf(spectra[0]!, weights, strainScale(side));
-    },
+    gram: (side, band) => lineGram(side, band, store, numerics),
     grams: (side, band, sights) => grams(side, band, sights, store, numerics),
     modePower: (side, band) => modePower(side, band, store, numerics),
     overlap,

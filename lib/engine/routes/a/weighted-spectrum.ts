@@ -1,6 +1,7 @@
 import type { Band, Side } from '@/lib/engine/contract/route';
 import type { Response } from '@/lib/engine/contract/settings';
 import { channelsOf } from './cross-spectrum';
+import { piecesOf, type Piece } from './file-pieces';
 import { houseNumerics } from './numerics';
 import { prepare } from './prepare';
 import type { SpectrumStore } from './spectrum-store';
@@ -20,7 +21,17 @@ export function weightedSpectrum(
   fHz: readonly number[],
   store: SpectrumStore,
 ): (number | null)[] {
-  const { spectra, dfHz } = prepare({ sides: [side], band, absoluteTimes: false }, store, houseNumerics);
+  const pieces = piecesOf(side, band, store);
+  const found = pieces.map((piece) => pieceSpectrum(piece, response, fHz, store));
+  return fHz.map((f, i) => {
+    const at = pieces.findLastIndex((piece) => f >= piece.band.fLowHz);
+    return found[Math.max(at, 0)]![i]!;
+  });
+}
+
+function pieceSpectrum({ side, band, longestS }: Piece, response: Response, fHz: readonly number[], store: SpectrumStore): (number | null)[] {
+  const lag = longestS === undefined ? {} : { longestS };
+  const { spectra, dfHz } = prepare({ sides: [side], band, absoluteTimes: false, ...lag }, store, houseNumerics);
   const { plus, minus } = channelsOf(spectra[0]!, response);
   const scale = side.strainPerUnit * side.secondsPerUnit;
   const factor = (minus === null ? 4 : 2) * scale * scale;
