@@ -5,6 +5,7 @@ import { RECOMMENDATION_WORDS, REPORT_QUESTIONS } from '@/lib/reviews/report';
 import type { RecordView as PublishedRecord } from '@/lib/services/records/record-view';
 import type { ReportView as HandedIn } from '@/lib/services/reviews/report-view';
 import type { LodgedView } from '@/lib/services/submissions/submission-view';
+import { answerTo } from '@/lib/services/submissions/finding-answers';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
 import { logsOf } from './run-log';
@@ -42,7 +43,7 @@ const decisionOf = ({ document, decision }: PublishedRecord): DecisionView => ({
 });
 
 const historyOf = (record: PublishedRecord, lodged: LodgedView | null): RecordView['history'] => [
-  ...(lodged?.revisions ?? []).map((revision) => ({ on: formatDay(revision.lodgedAt), text: `Lodged, revision ${revision.number}` })),
+  ...(lodged?.revisions ?? []).toReversed().map((revision) => ({ on: formatDay(revision.lodgedAt), text: `Lodged, revision ${revision.number}` })),
   { on: formatDay(record.document.enteredAt), text: `Entered by ${record.document.decision.by}` },
   ...(record.standing === 'entered' ? [] : [{ on: formatDay(record.standingSince), text: record.standingReason || record.standing }]),
 ];
@@ -51,12 +52,16 @@ const historyOf = (record: PublishedRecord, lodged: LodgedView | null): RecordVi
 export function recordAsView(record: PublishedRecord, lodged: LodgedView | null): RecordView {
   const { document } = record;
   const digest = document.resultDigest;
-  const affiliationOf = (name: string) => lodged?.authors.find((author) => author.name === name)?.affiliation ?? null;
+  const personOf = (name: string, i: number) => {
+    const known = lodged?.authors.find((author) => author.name === name);
+    const signed = document.orcids?.find(({ position }) => position === i + 1)?.orcid;
+    return { name, affiliation: known?.affiliation ?? null, orcid: signed ?? known?.orcid?.id ?? null, orcidAuthenticated: signed !== undefined || known?.orcid?.authenticated === true };
+  };
   return {
     mode: 'public',
     id: record.id,
     title: document.title,
-    people: document.authors.map((name) => ({ name, affiliation: affiliationOf(name) })),
+    people: document.authors.map(personOf),
     state: `Entered ${formatDay(document.enteredAt)}`,
     standing: record.standing,
     revision: document.revision,
@@ -68,6 +73,7 @@ export function recordAsView(record: PublishedRecord, lodged: LodgedView | null)
     result: resultOf(document),
     figures: {},
     figuresHref: lodged?.run ? figuresHref(record.submissionId, lodged.run.id) : null,
+    answerTo: (finding) => answerTo(lodged?.revision.answers ?? [], finding),
     logs: logsOf(lodged?.run ?? null, document.claims),
     statement: lodged?.revision.statement || null,
     decision: decisionOf(record),

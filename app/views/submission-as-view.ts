@@ -2,6 +2,7 @@ import type { RecordView, ReportView, RunView as RunOnScreen } from '@/app/_ui/c
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { DraftView, LodgedView, RunView } from '@/lib/services/submissions/submission-view';
+import { answerTo } from '@/lib/services/submissions/finding-answers';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
 import { logsOf } from './run-log';
@@ -37,7 +38,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     mode: submission.kind,
     id: submission.id,
     title: revision.title || 'Untitled',
-    people: submission.authors.map(({ name, affiliation }) => ({ name, affiliation })),
+    people: submission.authors.map(({ name, affiliation, orcid }) => ({ name, affiliation, orcid: orcid?.id ?? null, orcidAuthenticated: orcid?.authenticated ?? false })),
     state: submission.stateWords,
     standing: null,
     revision: revision.number,
@@ -49,11 +50,12 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     result,
     figures: extra.figures ?? {},
     figuresHref: run?.state === 'measured' ? figuresHref(submission.id, run.id) : null,
+    answerTo: (finding) => answerTo(revision.answers, finding),
     logs: logsOf(run, result?.claims ?? []),
     statement: revision.statement || null,
     decision: null,
     reports: extra.reports ?? [],
     cautions: extra.cautions ?? [],
-    history: revisions.map((r) => ({ on: formatDay(r.lodgedAt), text: `Lodged, revision ${r.number}` })),
+    history: revisions.toReversed().map((r) => ({ on: formatDay(r.lodgedAt), text: `Lodged, revision ${r.number}` })),
   };
 }

@@ -36,6 +36,8 @@ export const DOORS = {
   'POST /api/v1/submissions/{id}/revise': ['submission.revise'],
   'GET /api/v1/submissions/{id}/variations': ['submission.view-variations'],
   'POST /api/v1/submissions/{id}/variations': ['submission.vary'],
+  'GET /api/v1/openapi.json': ['anyone'],
+  'GET /schemas/{format}/{version}': ['anyone'],
   'GET /api/v1/jobs/failed': ['admin.read-jobs'],
   'POST /api/v1/jobs/{id}/retry': ['admin.retry-job'],
   'GET /account/export': ['account.read-own'],
@@ -51,7 +53,11 @@ export const DOORS = {
   'action tokens.revoke': ['account.manage-tokens'],
   'action compose.createDraft': ['submission.create'],
   'action compose.saveDraft': ['submission.edit'],
-  'action compose.loadSheet': ['submission.edit'],
+  // Needs both: to see it as its author, and to begin a submission.
+  'action compose.duplicate': ['submission.create', 'submission.view-draft'],
+  'action compose.listEarlier': ['submission.list-own'],
+  'action compose.takeOverFile': ['submission.edit'],
+  'action compose.restoreFile': ['submission.edit'],
   'action compose.removeFile': ['submission.edit'],
   'action compose.answerFinding': ['submission.edit'],
   'action compose.check': ['submission.check'],
@@ -61,6 +67,7 @@ export const DOORS = {
   'action compose.requestVariation': ['submission.vary'],
   'action compose.addCoAuthor': ['submission.manage-people'],
   'action compose.removeCoAuthor': ['submission.manage-people'],
+  'action compose.restoreCoAuthor': ['submission.manage-people'],
   'action compose.confirmAuthorship': ['submission.confirm-authorship'],
 } as const satisfies Readonly<Record<string, readonly DoorPolicy[]>>;
 

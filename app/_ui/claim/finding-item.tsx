@@ -11,12 +11,14 @@ const levels: Record<FindingLevel, { readonly word: string; readonly edge: strin
 
 interface FindingItemProps {
   readonly finding: Finding;
+  /** What the authors answered. */
+  readonly answer?: string | null;
   /** Buttons that do what `fix` says, or answer the finding. */
   readonly actions?: ReactNode;
 }
 
 /** A message about the data: level, where, what was seen, and the next step where one is known. */
-export function FindingItem({ finding, actions }: FindingItemProps) {
+export function FindingItem({ finding, answer, actions }: FindingItemProps) {
   const level = levels[finding.level];
   return (
     <div className={classes('edge grid gap-x-4 gap-y-0.5 border-t border-hair py-3 pl-3 text-ui first:border-t-0 sm:grid-cols-[118px_minmax(0,1fr)]', level.edge)}>
@@ -25,6 +27,7 @@ export function FindingItem({ finding, actions }: FindingItemProps) {
         <p><b>{finding.where}</b>: {finding.text}</p>
         {finding.fix && <p className="mt-1">{finding.fix}</p>}
         <p className="mt-1 font-code text-code text-ink-2">{finding.code}</p>
+        {answer && <p className="mt-1 border-l-2 border-control pl-3"><b>The authors answer:</b> {answer}</p>}
         {actions && <div className="mt-2 flex flex-wrap gap-2">{actions}</div>}
       </div>
     </div>

@@ -76,7 +76,7 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
             {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /></Part>}
             <Part title="Two routes"><RouteTable claim={claim} /></Part>
             <Part title="Findings">
-              {claim.findings.length === 0 ? <p className="text-ui text-ink-2">The checks found nothing to say about these data.</p> : claim.findings.map((finding, i) => <FindingItem key={`${finding.code}${i}`} finding={finding} />)}
+              {claim.findings.length === 0 ? <p className="text-ui text-ink-2">The checks found nothing to say about these data.</p> : claim.findings.map((finding, i) => <FindingItem key={`${finding.code}${i}`} finding={finding} answer={view.answerTo(finding)} />)}
             </Part>
             <RunLog view={view} claimId={claim.id} />
           </div>

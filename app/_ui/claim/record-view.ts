@@ -3,6 +3,7 @@
  * it from their services; the component itself asks nobody. It is plain data, so it can also cross
  * from a server to a client component; what is alive (threads, buttons) comes through the slots.
  */
+import type { Finding } from '@/lib/engine/contract/finding';
 import type { ReactNode } from 'react';
 import type { FiguresByClaim, ResultDocument, VerdictWord } from '@/lib/pipeline/result';
 import type { ProgressStep } from '../primitives/progress';
@@ -115,6 +116,8 @@ export interface RecordView {
   readonly figuresHref?: string | null;
   /** Whole address at which a record is published. */
   readonly address?: string | null;
+  /** What the authors answered to a finding. */
+  readonly answerTo: (finding: Finding) => string | null;
   /** Run log by claim id; `''` for the whole run. */
   readonly logs: Readonly<Record<string, string>>;
   /** Markdown with maths. */

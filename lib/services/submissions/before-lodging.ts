@@ -1,10 +1,12 @@
 import type { AuthorView, DraftSheet, FileView, RunView } from './submission-view';
 import { inputsDigest } from '@/lib/services/runs/inputs-digest';
+import { answerTo, type FindingAnswer } from './finding-answers';
 
 interface Draft {
   readonly title: string;
   readonly sheet: DraftSheet;
   readonly files: readonly Pick<FileView, 'name' | 'sha256'>[];
+  readonly answers: readonly FindingAnswer[];
   readonly authors: readonly AuthorView[];
   readonly check: { readonly run: RunView; readonly current: boolean } | null;
 }
@@ -19,10 +21,10 @@ export function beforeLodging(draft: Draft): readonly string[] {
     ...(draft.sheet.claims.length === 0 ? ['No number is claimed yet. Add a claim.'] : []),
     ...draft.authors.filter((a) => !a.confirmed).map((a) => `${a.name} has not confirmed authorship and the release of the data. Ask them to.`),
   ];
-  return [...own, ...fromCheck(draft.check)];
+  return [...own, ...fromCheck(draft.check, draft.answers)];
 }
 
-function fromCheck(check: Draft['check']): readonly string[] {
+function fromCheck(check: Draft['check'], answers: readonly FindingAnswer[]): readonly string[] {
   if (check === null) return ['Nothing has been checked yet. Run a check.'];
   const { run, current } = check;
   if (run.state === 'queued' || run.state === 'running') return ['The check is still running. Wait for it to end.'];
@@ -30,7 +32,8 @@ function fromCheck(check: Draft['check']): readonly string[] {
   if (run.state === 'stopped') return [`The check stopped: ${run.because} Check again.`];
   if (run.state === 'refused') return [`The check could not read the sheet or a file: ${run.problems.length} to mend, listed with the check.`];
   if (run.state !== 'measured') return [];
-  return run.result.claims.flatMap((claim) =>
-    claim.findings.filter((f) => f.level === 'stops-lodging').map((f) => `${claim.id}: ${f.text}${f.fix ? ` ${f.fix}` : ''}`),
-  );
+  const found = run.result.claims.flatMap((claim) => claim.findings.map((finding) => ({ claim: claim.id, ...finding })));
+  const stops = found.filter((f) => f.level === 'stops-lodging').map((f) => `${f.claim}: ${f.text}${f.fix ? ` ${f.fix}` : ''}`);
+  const asks = found.filter((f) => f.level === 'needs-answer' && answerTo(answers, f) === null).map((f) => `${f.claim} has a finding that needs your answer, about ${f.where}. Change the sheet as it says, or write why it stands.`);
+  return [...new Set([...stops, ...asks])];
 }

@@ -3,6 +3,7 @@
  * This file is what a submission looks like from outside the database. Every field is named here on
  * purpose: nothing reaches a browser because a table happened to have it.
  */
+import type { FindingAnswer } from './finding-answers';
 import type { Problem } from '@/lib/kernel/problem';
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 import type { SubmissionState } from '@/lib/policy/submission-state';
@@ -30,6 +31,7 @@ export interface AuthorView {
   readonly userId?: string;
   readonly name: string;
   readonly affiliation: string | null;
+  readonly orcid?: { readonly id: string; /** ORCID vouched for it; otherwise its owner typed it. */ readonly authenticated: boolean } | null;
   readonly role: 'author' | 'co-author';
   readonly confirmed: boolean;
 }
@@ -57,6 +59,8 @@ export interface RevisionView {
   readonly statement: string;
   readonly sheet: DraftSheet;
   readonly files: readonly FileView[];
+  /** The authors' answers to findings of its checks. */
+  readonly answers: readonly FindingAnswer[];
   /** Null while it is being written. */
   readonly lodgedAt: string | null;
   /** Save with this number; a stale one is a conflict. */

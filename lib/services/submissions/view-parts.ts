@@ -1,5 +1,6 @@
 import type { Reader } from '@/db/client';
 import { getSubmissionHead, listAuthors } from '@/db/reads/submissions/submission-head';
+import { listFindingAnswers } from '@/db/reads/submissions/finding-answers';
 import { listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import type { Actor } from '@/lib/policy/actor';
 import type { SubmissionFacts } from '@/lib/policy/facts';
@@ -23,10 +24,14 @@ export async function viewHead(reader: Reader, actor: Actor, facts: SubmissionFa
     round: head.round,
     currentRevision: head.currentRevision,
     stateChangedAt: sideOf(actor, facts) === 'editor' ? head.stateChangedAt.toISOString() : dayOnly(head.stateChangedAt),
-    authors: authors.map((a): AuthorView => ({ ...(facts.authorship && { userId: a.userId }), name: a.name, affiliation: a.affiliation, role: a.role, confirmed: a.confirmedAt !== null })),
+    authors: authors.map((a): AuthorView => ({ ...(facts.authorship && { userId: a.userId }), name: a.name, affiliation: a.affiliation, orcid: orcidOf(a), role: a.role, confirmed: a.confirmedAt !== null })),
     may: whatIsAllowed(actor, facts),
   };
 }
+
+/** What ORCID said goes before what somebody typed. */
+const orcidOf = ({ orcid, typedOrcid }: { readonly orcid: string | null; readonly typedOrcid: string | null }): AuthorView['orcid'] =>
+  orcid ? { id: orcid, authenticated: true } : typedOrcid ? { id: typedOrcid, authenticated: false } : null;
 
 /** An acceptance or a report moves a submission: the hour would tell who acted. */
 export const dayOnly = (moment: Date): string => `${utcDay(moment.toISOString())}T00:00:00.000Z`;
@@ -40,6 +45,7 @@ export async function viewRevision(reader: Reader, row: RevisionRow): Promise<Re
     statement: row.statement,
     sheet: asDraftSheet(row.sheet, row),
     files: files.map(({ id, name, bytes, sha256 }) => ({ id, name, bytes, sha256 })),
+    answers: await listFindingAnswers(reader, row.id),
     lodgedAt: row.lodgedAt?.toISOString() ?? null,
     version: row.version,
   };

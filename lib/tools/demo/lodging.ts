@@ -2,8 +2,10 @@ import { createReadStream, readdirSync, readFileSync } from 'node:fs';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { SignedInActor } from '@/lib/policy/actor';
+import { answerFinding } from '@/lib/services/submissions/answer-finding';
 import { addCoAuthor } from '@/lib/services/submissions/change-people';
 import { checkDraft } from '@/lib/services/submissions/check-draft';
+import { getDraft } from '@/lib/services/submissions/get-draft';
 import { createFromFolder } from '@/lib/services/submissions/load-sheet';
 import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
 import { must, type DemoRoom } from './demo-room';
@@ -30,8 +32,17 @@ export async function checkWell(room: DemoRoom, author: SignedInActor, id: strin
   await room.compute(must(await checkDraft(author, id)).runId);
 }
 
+/** The invented people's word on whatever the check asked them. */
+async function answerAll(author: SignedInActor, id: string): Promise<void> {
+  const { check } = must(await getDraft(author, id));
+  const found = check?.run.state === 'measured' ? check.run.result.claims.flatMap((claim) => claim.findings) : [];
+  const asked = new Map(found.filter((finding) => finding.level === 'needs-answer').map((finding) => [`${finding.code} ${finding.where} ${finding.text}`, finding]));
+  for (const { code, where, text } of asked.values()) must(await answerFinding(author, id, { code, where, text, answer: 'The claim is about the signals as attached; the statement says so.' }));
+}
+
 /** Checked, lodged, and officially computed: in Triage. */
 export async function lodge(room: DemoRoom, author: SignedInActor, id: string): Promise<void> {
   await checkWell(room, author, id);
+  await answerAll(author, id);
   await room.compute(must(await lodgeSubmission(author, id)).runId);
 }

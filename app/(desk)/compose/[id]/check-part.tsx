@@ -9,6 +9,7 @@ import { countVerdicts } from '@/app/_ui/verdict/verdict-words';
 import { Trouble } from '../../act-parts';
 import { useAct } from '../../use-act';
 import { check, lodge } from '../actions';
+import { AnswerForm } from './answer-form';
 import { AssumedSettings } from './assumed-settings';
 import type { CheckSummary } from './check-summary';
 import type { ComposerFields } from './fields';
@@ -92,15 +93,20 @@ function Problems({ latest, fields, onGo }: WithLatest) {
   );
 }
 
-function Findings({ latest, fields, onFix }: WithLatest) {
+function Findings({ id, latest, fields, onFix }: WithLatest) {
   if (latest.state !== 'measured') return null;
   if (latest.findings.length === 0) return <p className="px-4 py-3 text-ui text-ink-2">The checks found nothing to say about these data.</p>;
   return (
     <div role="group" aria-label="Findings" className="px-4 [&_.edge]:sm:grid-cols-1">
-      {latest.findings.map(({ finding, claims }, i) => {
+      {latest.findings.map(({ finding, claims, answer }) => {
         const fixes = claims.flatMap((claim) => fixesOf(finding, claim, fields()));
         const once = fixes.filter((fix, j) => fixes.findIndex((f) => f.field === fix.field && f.value === fix.value) === j);
-        return <FindingItem key={i} finding={finding} actions={once.length > 0 ? once.map((fix) => <Button key={fix.words} size="low" onClick={() => onFix(fix)}>{fix.words}</Button>) : undefined} />;
+        const asks = finding.level === 'needs-answer';
+        const actions = [
+          ...once.map((fix) => <Button key={fix.words} size="low" onClick={() => onFix(fix)}>{fix.words}</Button>),
+          ...(asks ? [<AnswerForm key="answer" id={id} finding={finding} answer={answer} />] : []),
+        ];
+        return <FindingItem key={`${finding.code} ${finding.where} ${finding.text}`} finding={finding} answer={answer} actions={actions.length > 0 ? actions : undefined} />;
       })}
     </div>
   );

@@ -2,12 +2,15 @@ import type { Finding } from '@/lib/engine/contract/finding';
 import { settingText } from './claim-fields';
 import type { Problem } from '@/lib/kernel/problem';
 import type { VerdictWord } from '@/lib/pipeline/result';
+import { answerTo, type FindingAnswer } from '@/lib/services/submissions/finding-answers';
 import type { DraftView } from '@/lib/services/submissions/submission-view';
 
 export interface FoundFinding {
   readonly finding: Finding;
   /** Claims that share it. */
   readonly claims: readonly string[];
+  /** What the authors answered to it, if anything. */
+  readonly answer: string | null;
 }
 
 export interface AssumedSetting {
@@ -34,7 +37,7 @@ export interface CheckSummary {
 
 const order = ['stops-lodging', 'needs-answer', 'worth-a-look', 'note'];
 
-export function checkSummary(check: DraftView['check']): CheckSummary | null {
+export function checkSummary(check: DraftView['check'], answers: readonly FindingAnswer[]): CheckSummary | null {
   if (!check) return null;
   const { run, current } = check;
   const claims = run.state === 'measured' ? run.result.claims : [];
@@ -46,14 +49,14 @@ export function checkSummary(check: DraftView['check']): CheckSummary | null {
     doing: run.state === 'queued' || run.state === 'running' ? run.doing : '',
     because: run.state === 'stopped' ? run.because : null,
     problems: run.state === 'refused' ? run.problems : [],
-    findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))),
+    findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))).map((found) => ({ ...found, answer: answerTo(answers, found.finding) })),
     verdicts: claims.map(({ id, verdict }) => ({ id, verdict })),
     assumed: claims.flatMap((c) => c.settings.filter((s) => s.standing === 'assumed' && s.value !== null).map((s) => ({ claim: c.id, name: s.name, value: settingText(s.value), unit: s.unit ?? '' }))),
   };
 }
 
 /** A finding about a file is told once, however many claims use the file. */
-function grouped(all: readonly { readonly finding: Finding; readonly claim: string }[]): readonly FoundFinding[] {
+function grouped(all: readonly { readonly finding: Finding; readonly claim: string }[]): readonly Omit<FoundFinding, 'answer'>[] {
   const byText = new Map<string, { finding: Finding; claims: string[] }>();
   for (const { finding, claim } of all) {
     const key = JSON.stringify(finding);

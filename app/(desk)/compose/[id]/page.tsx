@@ -3,6 +3,7 @@ import { redirect } from 'next/navigation';
 import { ClaimTable, ClaimTableLegend } from '@/app/_ui/claim/claim-table';
 import { submissionAsView } from '@/app/views/submission-as-view';
 import { loadFor, loadMember } from '@/lib/http/page-guard';
+import { listOpenUploads } from '@/lib/services/files/finish-upload';
 import { getDraft } from '@/lib/services/submissions/get-draft';
 import type { DraftView } from '@/lib/services/submissions/submission-view';
 import { catalogueRows } from './catalogue-rows';
@@ -34,9 +35,10 @@ export default async function Compose({ params }: PageProps) {
   const draft = await loadFor(`/compose/${id}`, (actor) => getDraft(actor, id));
   if (draft.revision.lodgedAt !== null) redirect(`/submissions/${id}`);
   const you = await loadMember(`/compose/${id}`);
+  const uploads = await loadFor(`/compose/${id}`, (actor) => listOpenUploads(actor, id));
   const { revision } = draft;
   return (
-    <Composer key={revision.id} id={id} revision={revision.number} version={revision.version} sheet={revision.sheet} files={revision.files} authors={draft.authors} you={you.userId} stateWords={draft.stateWords} catalogue={catalogueRows()} check={checkSummary(draft.check)} beforeLodging={draft.beforeLodging}>
+    <Composer key={revision.id} id={id} revision={revision.number} version={revision.version} sheet={revision.sheet} files={revision.files} uploads={uploads} authors={draft.authors} you={you.userId} stateWords={draft.stateWords} catalogue={catalogueRows()} check={checkSummary(draft.check, revision.answers)} beforeLodging={draft.beforeLodging}>
       <Reading draft={draft} />
     </Composer>
   );

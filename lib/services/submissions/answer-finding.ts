@@ -1,0 +1,32 @@
+import { z } from 'zod';
+import { findLatestRun } from '@/db/reads/runs/run';
+import { writeAnswer } from '@/db/writes/submissions/answer-finding';
+import { ok } from '@/lib/kernel/result';
+import type { Actor } from '@/lib/policy/actor';
+import { actOnSubmission } from '@/lib/services/act';
+import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
+import { currentRevision } from '@/lib/services/files/add-file';
+import { LODGED_ALREADY } from './update-draft';
+
+export const findingAnswer = z.strictObject({
+  code: z.string().min(1).max(200),
+  where: z.string().max(500),
+  text: z.string().min(1).max(2000),
+  answer: z.string().max(2000, 'at most 2,000 characters').transform((answer) => answer.trim()),
+});
+export type FindingAnswerInput = z.output<typeof findingAnswer>;
+
+/** The authors' word on a finding of the latest check; an empty one takes it back. */
+export function answerFinding(actor: Actor, submissionId: string, input: FindingAnswerInput): Promise<Outcome<null>> {
+  return actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
+    if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
+    const row = await currentRevision(tx, submissionId);
+    const run = row && (await findLatestRun(tx, row.id, 'check'));
+    if (!row) return { ok: false, error: NOT_FOUND };
+    const found = run?.result?.claims.some((claim) => claim.findings.some((f) => f.code === input.code && f.where === input.where && f.text === input.text));
+    if (!found) return fail('conflict', 'The latest check has no such finding. Look at its findings again; they may have changed with a later check.');
+    await writeAnswer(tx, grant, row.id, input, input.answer);
+    note({ answered: input.code, where: input.where });
+    return ok(null);
+  });
+}
