@@ -18,13 +18,32 @@ export async function addCoAuthor(tx: Transaction, grant: SubmissionGrant<'submi
   return added?.userId;
 }
 
+/** What stood in the list of somebody who was taken off it. */
+export interface FormerPlace {
+  readonly position: number;
+  readonly confirmedAt: Date | null;
+}
+
 /** The author who lodges stays; anybody else can be taken off while nothing is lodged. */
-export async function dropCoAuthor(tx: Transaction, grant: SubmissionGrant<'submission.manage-people'>, userId: string): Promise<boolean> {
-  const gone = await tx
+export async function dropCoAuthor(tx: Transaction, grant: SubmissionGrant<'submission.manage-people'>, userId: string): Promise<FormerPlace | undefined> {
+  const [gone] = await tx
     .delete(submissionPeople)
     .where(and(eq(submissionPeople.submissionId, grant.submissionId), eq(submissionPeople.userId, userId), eq(submissionPeople.role, 'co-author')))
+    .returning({ position: submissionPeople.position, confirmedAt: submissionPeople.confirmedAt });
+  return gone;
+}
+
+/** Back to where they stood, with what they had said; nothing when they are in the list again already. */
+export async function bringBackCoAuthor(tx: Transaction, grant: SubmissionGrant<'submission.manage-people'>, userId: string, { position, confirmedAt }: FormerPlace): Promise<boolean> {
+  const ofThis = sql`select position from submission_people where submission_id = ${grant.submissionId}`;
+  // Somebody else may have been named meanwhile and stand there now.
+  const free = sql<number>`(case when ${position} in (${ofThis}) then (select max(position) + 1 from (${ofThis}) p) else ${position} end)::int`;
+  const back = await tx
+    .insert(submissionPeople)
+    .values({ submissionId: grant.submissionId, userId, role: 'co-author', position: free, confirmedAt })
+    .onConflictDoNothing({ target: [submissionPeople.submissionId, submissionPeople.userId] })
     .returning({ userId: submissionPeople.userId });
-  return gone.length === 1;
+  return back.length === 1;
 }
 
 /** One's own authorship alone; nobody confirms for another. */

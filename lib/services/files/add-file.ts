@@ -36,7 +36,7 @@ export async function mayAdd(actor: Actor, submissionId: string, name: string): 
   return row ? roomFor(database(), row, name) : { ok: false, error: NOT_FOUND };
 }
 
-export export async function roomFor(reader: Reader, row: RevisionRow, name: string): Promise<Outcome<null>> {
+export async function roomFor(reader: Reader, row: RevisionRow, name: string): Promise<Outcome<null>> {
   const files = await listRevisionFiles(reader, row.id);
   const clash = files.find((f) => f.name !== name && f.name.normalize('NFC').toLowerCase() === name.normalize('NFC').toLowerCase());
   if (clash) return fail('invalid', `${name} and ${clash.name} differ in letter case alone, which some computers cannot keep apart. Rename one.`);

@@ -21,7 +21,7 @@ export type BegunUpload = { readonly file: FileView; readonly upload: null } | {
 /** Announces a long file. The same file announced again goes on where it broke off; another of the same name takes its place. */
 export async function beginUpload(actor: Actor, submissionId: string, file: AnnouncedFile): Promise<Outcome<BegunUpload>> {
   const replaced: string[] = [];
-  const begun = await actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
+  const begun = await actOnSubmission<'submission.edit', BegunUpload>({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
     const fault = pathFault(file.name);
     if (fault !== null) return fail('invalid', `The file has ${fault} for a name; expected a relative path such as data/a.txt. Rename it.`);

@@ -1,4 +1,5 @@
-import { addCoAuthor as writeCoAuthor, confirmOwnAuthorship, dropCoAuthor } from '@/db/writes/submissions/change-people';
+import { findRecentRemoval } from '@/db/reads/submissions/recent-removal';
+import { addCoAuthor as writeCoAuthor, bringBackCoAuthor, confirmOwnAuthorship, dropCoAuthor } from '@/db/writes/submissions/change-people';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { actOnSubmission } from '@/lib/services/act';
@@ -19,8 +20,21 @@ export function addCoAuthor(actor: Actor, submissionId: string, input: { readonl
 export function removeCoAuthor(actor: Actor, submissionId: string, input: { readonly userId: string }): Promise<Outcome<null>> {
   return actOnSubmission({ actor, action: 'submission.manage-people', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
-    if (!(await dropCoAuthor(tx, grant, input.userId))) return { ok: false, error: NOT_FOUND };
-    note({ removedCoAuthor: input.userId });
+    const former = await dropCoAuthor(tx, grant, input.userId);
+    if (!former) return { ok: false, error: NOT_FOUND };
+    note({ removedCoAuthor: input.userId, position: former.position, confirmedAt: former.confirmedAt?.toISOString() ?? null });
+    return ok(null);
+  });
+}
+
+/** Takes a removal back, for as long as a slip is noticed: place and confirmation are as they were. */
+export function restoreCoAuthor(actor: Actor, submissionId: string, input: { readonly userId: string }): Promise<Outcome<null>> {
+  return actOnSubmission({ actor, action: 'submission.manage-people', submissionId }, async ({ tx, grant, facts, note }) => {
+    if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
+    const former = await findRecentRemoval(tx, submissionId, input.userId);
+    if (!former) return fail('conflict', 'This removal is longer ago than can be undone. Name them again by their address.');
+    if (!(await bringBackCoAuthor(tx, grant, input.userId, former))) return fail('conflict', 'They are in the list of authors already.');
+    note({ restoredCoAuthor: input.userId });
     return ok(null);
   });
 }

@@ -1,5 +1,4 @@
 import { z } from 'zod';
-import { saveRevision } from '@/db/writes/submissions/save-revision';
 import { storeFile, type UploadedFile } from '@/db/writes/files/store-file';
 import { createSubmission } from '@/db/writes/submissions/create-submission';
 import { parseSheetText } from '@/lib/claims/sheet-text';
@@ -7,11 +6,9 @@ import type { Problem } from '@/lib/kernel/problem';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { mayGenerally } from '@/lib/policy/grant';
-import { actGenerally, actOnSubmission } from '@/lib/services/act';
-import { AppFailure, fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
-import { currentRevision } from '@/lib/services/files/add-file';
+import { actGenerally } from '@/lib/services/act';
+import { AppFailure, fail, type Outcome } from '@/lib/services/app-error';
 import { discardStaged, MAX_FILES, stageFile, type Incoming } from '@/lib/services/files/stage-file';
-import { LODGED_ALREADY } from './update-draft';
 
 /** Enough shape to be edited; what the words mean is judged by the check, with every problem listed. */
 const loadable = z.looseObject({
@@ -31,22 +28,6 @@ export function readSheetText(text: string): Outcome<Loadable> {
   if (sheet.success) return ok(sheet.data);
   const problems = sheet.error.issues.map((i): Problem => ({ code: 'claims/shape', where: `/${i.path.map(String).join('/')}`, saw: 'something else', expected: i.message }));
   return fail('invalid', 'claim.json is not a claim sheet of the format counterfoil-claim/1.', problems);
-}
-
-/** Fills the draft from the text of a `claim.json`; its files are added by themselves. */
-export function loadSheet(actor: Actor, submissionId: string, input: { readonly version: number; readonly claimJson: string }): Promise<Outcome<{ readonly version: number }>> {
-  return actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
-    if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
-    const sheet = readSheetText(input.claimJson);
-    if (!sheet.ok) return sheet;
-    const row = await currentRevision(tx, submissionId);
-    if (!row) return { ok: false, error: NOT_FOUND };
-    const { title, statement } = sheet.value;
-    const version = await saveRevision(tx, grant, { revisionId: row.id, version: input.version }, { title, statement, sheet: sheet.value });
-    if (version === undefined) return fail('conflict', `Somebody saved version ${row.version} meanwhile; this sheet was loaded on version ${input.version}.`);
-    note({ revision: row.number, version, loaded: true });
-    return ok({ version });
-  });
 }
 
 export interface Folder {

@@ -1,19 +1,14 @@
 'use client';
-import { useState } from 'react';
 import { useFieldArray } from 'react-hook-form';
 import { Button } from '@/app/_ui/primitives/button';
-import { TextareaField } from '@/app/_ui/primitives/control';
-import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
-import { Notice } from '@/app/_ui/primitives/notice';
-import { Table } from '@/app/_ui/primitives/table';
 import { say } from '@/app/_ui/primitives/toaster';
 import type { VerdictWord } from '@/lib/pipeline/result';
 import type { QuantityRow } from './quantity-row';
 import { emptyClaim, type ClaimFields } from './claim-fields';
 import { ClaimRow } from './claim-row';
 import { moveInColumn } from './move-in-column';
-import { pasteClaims } from './paste-claims';
+import { PasteClaims } from './paste-part';
 import type { ComposerForm } from './waveform-part';
 
 interface ClaimsPartProps {
@@ -34,6 +29,11 @@ export function ClaimsPart({ form, catalogue, verdicts }: ClaimsPartProps) {
     rows.remove(index);
     say(`Claim ${gone.id} is removed.`, () => rows.insert(index, gone));
   };
+  const fill = (claims: readonly ClaimFields[]) => {
+    const before = rows.fields.length;
+    rows.append([...claims]);
+    say(`${claims.length} ${claims.length === 1 ? 'claim is' : 'claims are'} filled in.`, () => rows.remove(claims.map((_, i) => before + i)));
+  };
   return (
     <div className="grid gap-4">
       {rows.fields.length === 0 && <EmptyState level={3} title="No number is claimed yet">A claim is one number with its settings, or one number for each value of one setting.</EmptyState>}
@@ -50,39 +50,7 @@ export function ClaimsPart({ form, catalogue, verdicts }: ClaimsPartProps) {
         </div>
       )}
       <div className="flex flex-wrap gap-2"><Button onClick={() => rows.append(fresh())}>Add a claim</Button></div>
-      <PasteClaims catalogue={catalogue} taken={ids} like={fresh} onFill={(claims) => rows.append([...claims])} />
+      <PasteClaims room={{ catalogue, ...names }} taken={ids} like={fresh} onFill={fill} />
     </div>
   );
 }
-
-interface PasteProps {
-  readonly catalogue: readonly QuantityRow[];
-  readonly taken: () => readonly string[];
-  readonly like: () => ClaimFields;
-  readonly onFill: (claims: readonly ClaimFields[]) => void;
-}
-
-/** What will be filled in is shown before it is. */
-function PasteClaims({ catalogue, taken, like, onFill }: PasteProps) {
-  const [text, setText] = useState('');
-  const settings = [...new Set(catalogue.flatMap((q) => q.settings.map((s) => s.name as string)))];
-  const pasted = text.trim() === '' ? null : pasteClaims(text, taken(), settings, like());
-  return (
-    <Disclosure summary="Paste claims from a spreadsheet">
-      <div className="grid gap-3">
-        <TextareaField label="Table" value={text} spellCheck={false} onChange={(e) => setText(e.target.value)} placeholder={'quantity\ta\tb\tnoise\ttotalMassMsun\tclaimed\nmatch\tA\tB\tS\t60\t0.9185'} hint="The first line names the columns: id, quantity, a, b, noise, claimed, tolerance, or any setting." />
-        {pasted && pasted.problems.length > 0 && <Notice kind="look">{pasted.problems.map((p) => <p key={p}>{p}</p>)}</Notice>}
-        {pasted && pasted.claims.length > 0 && (
-          <>
-            <Table caption="What will be filled in">
-              <thead><tr><th scope="col">Claim</th><th scope="col">Quantity</th><th scope="col">Of</th><th scope="col">Settings</th><th scope="col">Claimed</th></tr></thead>
-              <tbody>{pasted.claims.map((c) => <tr key={c.id}><th scope="row">{c.id}</th><td>{c.quantity}</td><td>{[c.a, c.b].filter(Boolean).join(', ')}</td><td>{Object.entries(c.settings).map(([k, v]) => `${k} ${v}`).join(', ')}</td><td>{c.claimed}</td></tr>)}</tbody>
-            </Table>
-            <div><Button tone="main" onClick={() => { onFill(pasted.claims); setText(''); }}>Fill in {pasted.claims.length} {pasted.claims.length === 1 ? 'claim' : 'claims'}</Button></div>
-          </>
-        )}
-      </div>
-    </Disclosure>
-  );
-}
-

@@ -5,19 +5,22 @@
  */
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useRouter } from 'next/navigation';
-import { useCallback, useEffect, useMemo, useRef, type ReactNode } from 'react';
+import { useCallback, useEffect, useMemo, useRef, useState, type ReactNode } from 'react';
 import { useForm, type FieldPath } from 'react-hook-form';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { OfflineStrap } from '@/app/_ui/primitives/offline-strap';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { Button } from '@/app/_ui/primitives/button';
 import { say } from '@/app/_ui/primitives/toaster';
+import type { UploadView } from '@/lib/services/files/upload-view';
 import type { AuthorView, DraftSheet, FileView } from '@/lib/services/submissions/submission-view';
+import type { NamedFile } from '../../preview/preview-message';
 import { CheckPart, isRunning } from './check-part';
 import type { CheckSummary } from './check-summary';
 import { ClaimsPart } from './claims-part';
 import { composerSchema } from './composer-schema';
 import { ConflictView } from './conflict-view';
+import { FromEarlier } from './earlier-parts';
 import { fieldsFromSheet, type ComposerFields } from './fields';
 import { FilesPart } from './files-part';
 import type { Fix } from './fixes';
@@ -26,10 +29,12 @@ import { KeptCopy } from './kept-copy';
 import { NoisePart } from './noise-part';
 import { PartNav } from './part-nav';
 import { PeoplePart } from './people-part';
+import { PreviewPart } from './preview-part';
 import type { QuantityRow } from './quantity-row';
 import { forget, useAutosave } from './save-draft';
 import { SaveLine } from './save-line';
 import { StatementPart, TitleField } from './statement-part';
+import { useImport } from './use-import';
 import { WaveformsPart, type ComposerForm } from './waveform-part';
 
 export interface ComposerProps {
@@ -38,6 +43,8 @@ export interface ComposerProps {
   readonly version: number;
   readonly sheet: DraftSheet;
   readonly files: readonly FileView[];
+  /** Of one's own, broken off. */
+  readonly uploads: readonly UploadView[];
   readonly authors: readonly AuthorView[];
   readonly you: string;
   readonly stateWords: string;
@@ -70,12 +77,17 @@ function useComposer({ id, version, sheet, check }: ComposerProps) {
     requestAnimationFrame(() => goToField(field));
   }, [form, set]);
   const take = (fields: ComposerFields) => form.reset(fields);
-  return { form, saving, applyFix, go, take };
+  // As an edit: the baseline stays, so that it is saved like anything typed.
+  const put = useCallback((fields: ComposerFields) => form.reset(fields, { keepDefaultValues: true }), [form]);
+  return { form, saving, applyFix, go, take, put };
 }
 
 export function Composer(props: ComposerProps) {
   const { id, files, children } = props;
-  const { form, saving, applyFix, go, take } = useComposer(props);
+  const { form, saving, applyFix, go, take, put } = useComposer(props);
+  const importing = useImport(form, put);
+  const [given, setGiven] = useState<ReadonlyMap<string, Blob>>(new Map());
+  const give = (some: readonly NamedFile[]) => setGiven((now) => new Map([...now, ...some.map(({ name, file }) => [name, file] as const)]));
   const names = files.map((f) => f.name);
   const keepMine = (version: number) => { saving.takeVersion(version); void saving.saveNow(); };
   const takeTheirs = (version: number, sheet: DraftSheet) => { saving.takeVersion(version); take(fieldsFromSheet(sheet)); forget(id); void saving.saveNow(); };
@@ -91,10 +103,11 @@ export function Composer(props: ComposerProps) {
       <div className="mt-6 grid items-start gap-6 mid:grid-cols-[minmax(0,1fr)_360px]">
         <div className="grid min-w-0 gap-10">
           <PartNav form={form} files={files.length} />
-          <Part id="files" title="Files"><FilesPart id={id} files={files} usedBy={(name) => usersOf(form, name)} version={() => saving.version.current} settle={saving.saveNow} /></Part>
+          <Part id="files" title="Files"><FilesPart id={id} files={files} uploads={props.uploads} usedBy={(name) => usersOf(form, name)} onGiven={give} importing={importing} /></Part>
           <Part id="waveforms" title="Waveforms"><WaveformsPart form={form} files={names} /></Part>
-          <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} /></Part>
+          <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} /><div className="mt-2"><FromEarlier id={id} form={form} files={files} put={put} /></div></Part>
           <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} verdicts={props.check?.current ? props.check.verdicts : []} /></Part>
+          <Part id="preview" title="First look"><PreviewPart id={id} form={form} files={files} given={given} onGiven={give} /></Part>
           <Part id="statement" title="Statement"><StatementPart form={form} /></Part>
           <Part id="people" title="People"><PeoplePart id={id} authors={props.authors} you={props.you} /></Part>
         </div>

@@ -141,4 +141,7 @@ export function sheetFromFields(fields: ComposerFields): SheetParts {
 }
 
 export const emptyWaveform = (name: string, file = ''): WaveformFields => ({ ...fieldsFromWaveform(name, {}), file, columns: file ? 't re22 im22' : '' });
+/** A declaration of a sheet under a name of this draft. */
+export const noiseNamed = (name: string, declaration: Json): NoiseFields => fieldsFromNoise(name, declaration);
+
 export const emptyNoise = (name: string, file = ''): NoiseFields => ({ ...fieldsFromNoise(name, {}), file, kind: file ? 'file' : 'curve', meaning: 'asd', columns: file ? 'f asd' : '', curve: file ? '' : 'G2' });

@@ -1,5 +1,5 @@
 'use client';
-import { useEffect, useState } from 'react';
+import { useEffect, useState, useSyncExternalStore } from 'react';
 import { Button } from '@/app/_ui/primitives/button';
 import { Notice } from '@/app/_ui/primitives/notice';
 import type { ComposerFields } from './fields';
@@ -12,13 +12,24 @@ interface KeptProps {
   readonly onUse: (fields: ComposerFields) => void;
 }
 
-/** Offers what was written in this browser and never reached the server. */
-export function KeptCopy({ id, form, onUse }: KeptProps) {
-  const [kept, setKept] = useState<ComposerFields | null>(null);
+const never = () => () => undefined;
+
+/** Offers what was written in this browser and never reached the server. The server cannot know it, so it is drawn once the page lives. */
+export function KeptCopy(props: KeptProps) {
+  const living = useSyncExternalStore(never, () => true, () => false);
+  return living && <Kept {...props} />;
+}
+
+/** What was kept when the page was opened, where it differs from what was saved. */
+function foundAtFirst(id: string, form: ComposerForm): ComposerFields | null {
+  const found = readKept(id);
+  return found && JSON.stringify(found) !== JSON.stringify(form.getValues()) ? found : null;
+}
+
+function Kept({ id, form, onUse }: KeptProps) {
+  const [kept, setKept] = useState(() => foundAtFirst(id, form));
   useEffect(() => {
-    const found = readKept(id);
-    if (found && JSON.stringify(found) !== JSON.stringify(form.getValues())) setKept(found);
-    else forget(id);
+    if (foundAtFirst(id, form) === null) forget(id);
   }, [id, form]);
   if (!kept) return null;
   const use = () => { onUse(kept); setKept(null); };

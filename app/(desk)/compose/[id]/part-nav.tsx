@@ -9,6 +9,7 @@ export function PartNav({ form, files }: { readonly form: ComposerForm; readonly
     ['waveforms', 'Waveforms', waveforms.length],
     ['noise', 'Noise', noise.length],
     ['claims', 'Claims', claims.length],
+    ['preview', 'First look', null],
     ['statement', 'Statement', null],
     ['people', 'People', null],
     ['check', 'Check', null],
