@@ -11,6 +11,8 @@ export interface Piece {
   readonly longestS: number | undefined;
 }
 
+/** Pieces cost less than as many even lines as this. */
+const MOST_WHOLE = 1 << 18;
 /** Pieces meet at powers of this in the file's own frequency, so that all masses share them. */
 const RATIO = 16;
 /** A piece is never narrower than this ratio; it joins its neighbour. */
@@ -65,7 +67,7 @@ const firstJoint = (lowHz: number, secondsPerUnit: number): number => Math.ceil(
 export function piecesOf(side: Side, band: Band, store: SpectrumStore): Piece[] {
   const whole = { side, band, longestS: undefined };
   const { waveform, secondsPerUnit } = side;
-  if (waveform.domain !== 'frequency' || !(evenLines({ sides: [side], band, absoluteTimes: false }, store) > MOST_EVEN_LINES)) return [whole];
+  if (waveform.domain !== 'frequency' || !(evenLines({ sides: [side], band, absoluteTimes: false }, store) > MOST_WHOLE)) return [whole];
   const { low, high } = contentBand([side], band, store);
   if (!(high > low)) return [whole];
   const first = firstJoint(low, secondsPerUnit);

@@ -124,6 +124,7 @@ export function frequencySource(side: Side): Source {
     return spectrum;
   };
   return {
+    givenInFrequency: true,
     centreS,
     spanS: all.length === 0 ? 0 : (latest - earliest) * secondsPerUnit,
     nyquistHz: axis[axis.length - 1]! / secondsPerUnit,

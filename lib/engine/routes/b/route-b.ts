@@ -15,7 +15,7 @@ const sourceOf = (side: Side, knobs: RouteBKnobs): Source => (side.waveform.doma
 
 function gram(side: Side, band: Band, knobs: RouteBKnobs): ResponseGram {
   const source = sourceOf(side, knobs);
-  const nodes = nodesFor([source], band, knobs);
+  const nodes = nodesFor([source], band, knobs, { power: true });
   const { xRe, xIm, yRe, yIm } = source.line(side.inclinationRad, side.azimuthRad, nodes.f);
   let [xx, yy, xy] = [0, 0, 0];
   for (let i = 0; i < nodes.f.length; i++) {
@@ -34,14 +34,14 @@ function grams(side: Side, band: Band, sights: readonly Sight[], knobs: RouteBKn
     return sights.map(() => one);
   }
   const source = sourceOf(side, knobs);
-  const nodes = nodesFor([source], band, knobs, { allModes: true });
+  const nodes = nodesFor([source], band, knobs, { allModes: true, power: true });
   return sights.map(modeGram(source.modes(nodes.f), nodes.weight));
 }
 
 function modePower(side: Side, band: Band, knobs: RouteBKnobs): number {
   if (side.waveform.content.kind !== 'modes') return Number.NaN;
   const source = sourceOf(side, knobs);
-  const nodes = nodesFor([source], band, knobs, { allModes: true });
+  const nodes = nodesFor([source], band, knobs, { allModes: true, power: true });
   // |z(f)|² + |z(−f)|² is what the complex channels carry, with prefactor 2.
   return source.modes(nodes.f).reduce((sum, { spectrum }) => sum + normSquared(channelsOf(spectrum, 'complex'), nodes.weight), 0);
 }

@@ -2,7 +2,12 @@ import type { Band } from '../../contract/route';
 import { frequencyNodes, type FrequencyNodes } from './frequency-panels';
 import type { RouteBKnobs, Source } from './spectrum';
 
+/** Turns of the integrand that nodes follow up to the band's end. A power has none of the delays of a file in frequency, only those between its parts. */
+const MOST_TURNS = 1 << 19;
+
 export interface NodeWishes {
+  /** One source against itself: lags beyond MOST_TURNS of the highest frequency are not followed. */
+  readonly power?: boolean;
   /** Read every mode of each source, not only its line of sight. */
   readonly allModes?: boolean;
   /** Lag in s beyond the longest record: between records that no shift removes, or that a free shift opens. */
@@ -27,5 +32,6 @@ export function nodesFor(sources: readonly Source[], band: Band, knobs: RouteBKn
   const lives = sources.map((source) => (source.nyquistHz > fLowHz ? source.liveHighHz(psd, fLowHz, top, wishes.allModes ?? false) : fLowHz));
   const high = Math.min(Math.max(...lives), top);
   const lag = Math.max(...sources.map((source) => source.spanS)) + (wishes.extraLagS ?? 0);
-  return frequencyNodes(band, high, Math.max(lag, 1e-9), knobs.quadrature);
+  const followed = wishes.power && sources.every(({ givenInFrequency }) => givenInFrequency) ? Math.min(lag, MOST_TURNS / high) : lag;
+  return frequencyNodes(band, high, Math.max(followed, 1e-9), knobs.quadrature);
 }

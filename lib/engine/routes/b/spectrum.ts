@@ -15,6 +15,8 @@ export interface ModeSpectrum {
 
 /** A side of an inner product, ready to be read at any frequency. */
 export interface Source {
+  /** Read from lines in frequency: its span is one of group delays, not of a record. */
+  readonly givenInFrequency: boolean;
   /** Middle of the record in s, on the time axis of its file. */
   readonly centreS: number;
   /** Length of the record in s: the longest lag of its own correlation. */

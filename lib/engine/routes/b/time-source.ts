@@ -188,6 +188,7 @@ export function timeSource(side: Side, knobs: RouteBKnobs): Source {
     return padded(spectrum, fHz.length);
   };
   return {
+    givenInFrequency: false,
     centreS: (record.first + span / 2) * secondsPerUnit,
     spanS: span * secondsPerUnit,
     nyquistHz,
