@@ -1,5 +1,6 @@
 import type { Metadata, Viewport } from 'next';
 import { cookies } from 'next/headers';
+import { NuqsAdapter } from 'nuqs/adapters/next/app';
 import type { ReactNode } from 'react';
 import { parseTheme, themeCookie } from './_ui/primitives/theme';
 import { dark, light } from './_ui/tokens';
@@ -25,7 +26,7 @@ export default async function RootLayout({ children }: { readonly children: Reac
   const theme = parseTheme((await cookies()).get(themeCookie)?.value);
   return (
     <html lang="en" data-theme={theme === 'system' ? undefined : theme} className={fontVariables}>
-      <body>{children}</body>
+      <body><NuqsAdapter>{children}</NuqsAdapter></body>
     </html>
   );
 }

@@ -7,9 +7,12 @@ import { decimalsFor, formatNumber, powerOfTen } from '../math/format-number';
  */
 export interface AxisScale {
   readonly toPlot: (value: number) => number | null;
+  readonly fromPlot: (place: number) => number;
   /** Places of the ticks in plot units and what stands at them. */
   readonly ticks: ((low: number, high: number) => readonly number[]) | null;
   readonly labels: (places: readonly number[]) => string[];
+  /** One place alone, to the digits that tell it from others nearby: for ticks that are no round powers. */
+  readonly valueLabel: (place: number) => string;
 }
 
 const most = 7;
@@ -33,6 +36,8 @@ const logLabel = (place: number): string => {
 
 const logScale: AxisScale = {
   toPlot: (value) => (value > 0 ? Math.log10(value) : null),
+  fromPlot: (place) => 10 ** place,
+  valueLabel: (place) => formatNumber(10 ** place, { significant: 4 }),
   ticks: logTicks,
   labels: (places) => places.map((place) => logLabel(place).replace(/^1 × /, '')),
 };
@@ -45,11 +50,12 @@ function linearLabels(places: readonly number[]): string[] {
   return places.map((place) => formatNumber(place, { decimals, plain: true }));
 }
 
-const linearScale: AxisScale = { toPlot: (value) => value, ticks: null, labels: linearLabels };
+const linearScale: AxisScale = { toPlot: (value) => value, fromPlot: (place) => place, ticks: null, labels: linearLabels, valueLabel: (place) => formatNumber(place) };
 
 function shifted(power: number): AxisScale {
   const factor = 10 ** -power;
-  return { toPlot: (value) => value * factor, ticks: null, labels: (places) => linearLabels(places).map((label) => (/[1-9]/.test(label) ? `${label} × ${powerOfTen(power)}` : '0')) };
+  const valueLabel = (place: number) => formatNumber(place / factor, { significant: 4 });
+  return { toPlot: (value) => value * factor, fromPlot: (place) => place / factor, ticks: null, valueLabel, labels: (places) => linearLabels(places).map((label) => (/[1-9]/.test(label) ? `${label} × ${powerOfTen(power)}` : '0')) };
 }
 
 

@@ -1,12 +1,21 @@
 'use client';
 import { createContext, useContext } from 'react';
+import type { Range } from './zoom';
 
-/** One cursor for all plots of a claim that share a horizontal axis: place along x, by cursor group. */
+/** One cursor and one view for all plots of a claim that share a horizontal axis, by cursor group. */
 export interface CursorLink {
+  /** Where the cursor stands along x. */
   readonly places: Readonly<Record<string, number>>;
+  /** The part that is looked at; absent where it is the whole axis. */
+  readonly ranges: Readonly<Record<string, Range>>;
+  /** Follows the pointer. */
   readonly moveTo: (group: string, x: number) => void;
+  /** Chosen by a click or a key: kept in the address. */
+  readonly settle: (group: string, x: number) => void;
+  readonly zoomTo: (group: string, range: Range | null) => void;
 }
-export const CursorContext = createContext<CursorLink>({ places: {}, moveTo: () => undefined });
+const nothing = () => undefined;
+export const CursorContext = createContext<CursorLink>({ places: {}, ranges: {}, moveTo: nothing, settle: nothing, zoomTo: nothing });
 export const useCursorLink = (): CursorLink => useContext(CursorContext);
 
 /** Index of the sample nearest to a place; the axis rises. */

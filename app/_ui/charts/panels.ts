@@ -14,7 +14,7 @@ export interface Panel {
   readonly showsX: boolean;
 }
 
-const isBand = (series: FigureSeries) => series.role === 'band-low' || series.role === 'band-high';
+export const isBand = (series: FigureSeries) => series.role === 'band-low' || series.role === 'band-high';
 
 /** What must not share an axis: two units on one plot would invite a wrong reading. */
 const groupKey = (series: FigureSeries) => (series.role === 'residual' ? 'residual' : `${series.axis} ${series.scale} ${series.unit}`);
@@ -46,4 +46,7 @@ export const drawnAsPoints = (figure: Figure, series: FigureSeries): boolean =>
 export const drawnDashed = (figure: Figure, series: FigureSeries): boolean => series.role === 'recomputed' && figure.kind === 'waveforms';
 
 /** Plots of one claim move their cursors together when their horizontal axes mean the same. */
-export const cursorGroup = (claimId: string, figure: Figure): string => `${claimId}/${figure.x.label}/${figure.x.unit}`;
+export const cursorGroup = (claimId: string, figure: Figure): string => [claimId, figure.x.label, figure.x.unit].map(word).join('.');
+
+/** A name that an address can hold. */
+const word = (text: string): string => text.normalize('NFKD').replace(/[^A-Za-z0-9_]+/g, '-').slice(0, 40);

@@ -45,7 +45,7 @@ export function plotSpec(figure: Figure, panel: Panel, palette: Palette): PlotSp
     height: panel.heightPx,
     legend: { show: false },
     padding: [8, 16, panel.showsX ? 0 : 8, 0],
-    cursor: { drag: { x: false, y: false }, points: { size: 7 }, y: false },
+    cursor: { drag: { x: true, y: false, setScale: false }, points: { size: 7 }, y: false },
     scales: { x: { time: false } },
     axes: [
       { ...axis, scale: 'x', size: panel.showsX ? 28 : 0, splits: splitsOf(x), values: (_, places) => (panel.showsX ? x.labels(places) : places.map(() => '')) },

@@ -1,89 +1,16 @@
 'use client';
-import { useEffect, useMemo, useRef, useState, type KeyboardEvent, type ReactNode } from 'react';
-import type uPlot from 'uplot';
+import { useMemo, type KeyboardEvent, type ReactNode } from 'react';
 import type { Figure } from '@/lib/engine/contract/measurement';
 import { UnitLabel } from '../math/unit-label';
+import { axisScale } from './axis-scale';
 import { nearestIndex, useCursorLink } from './cursor-link';
-import { usePalette } from './palette-in-use';
-import { cursorGroup, drawnAsPoints, drawnDashed, panelsOf, type Panel } from './panels';
-import { colourOf, plotSpec } from './plot-options';
+import { PanelMount } from './panel-mount';
+import { cursorGroup, drawnAsPoints, drawnDashed, panelsOf } from './panels';
+import { colourOf } from './plot-options';
+import { PlotTools } from './plot-tools';
 import { readoutOf, steppedIndex } from './readout';
 import { ValuesTable } from './values-table';
-
-interface PanelMountProps {
-  readonly figure: Figure;
-  readonly panel: Panel;
-  readonly index: number;
-  readonly onIndex: (index: number) => void;
-  /** Drawn on the server; stands until the live plot does. */
-  readonly still: ReactNode;
-}
-
-/** The one place where the plotting library is mounted. It waits until its box has a width, so a closed claim costs nothing. */
-function PanelMount({ figure, panel, index, onIndex, still }: PanelMountProps) {
-  const box = useRef<HTMLDivElement>(null);
-  const plot = useRef<uPlot | null>(null);
-  const report = useRef(onIndex);
-  const at = useRef(index);
-  const [live, setLive] = useState(false);
-  const palette = usePalette();
-  const spec = useMemo(() => plotSpec(figure, panel, palette), [figure, panel, palette]);
-  useEffect(() => {
-    report.current = onIndex;
-    at.current = index;
-  });
-  useEffect(() => {
-    const element = box.current;
-    if (!element) return;
-    let gone = false;
-    let loading = false;
-    const mount = async (width: number) => {
-      loading = true;
-      const { default: UPlot } = await import('uplot');
-      if (gone) return;
-      const restore = (u: uPlot) => showAt(u, spec.data, at.current);
-      const follow = (u: uPlot) => {
-        if (typeof u.cursor.idx === 'number') report.current(u.cursor.idx);
-      };
-      plot.current = new UPlot({ ...spec.options, axes: inTypeOf(element, spec.options.axes), width, hooks: { ready: [restore], setSize: [restore], setCursor: [follow] } }, spec.data, element);
-      setLive(true);
-    };
-    const observer = new ResizeObserver(([entry]) => {
-      const width = Math.floor(entry?.contentRect.width ?? 0);
-      if (width === 0) return;
-      if (plot.current) plot.current.setSize({ width, height: panel.heightPx });
-      else if (!loading) void mount(width);
-    });
-    observer.observe(element);
-    return () => {
-      gone = true;
-      observer.disconnect();
-      plot.current?.destroy();
-      plot.current = null;
-    };
-  }, [spec, panel.heightPx]);
-  useEffect(() => {
-    if (plot.current) showAt(plot.current, spec.data, index);
-  }, [index, spec]);
-  return (
-    <div className="relative min-w-0" style={{ height: panel.heightPx }}>
-      <div ref={box} className="absolute inset-0" />
-      {!live && <div className="absolute inset-0 ml-16">{still}</div>}
-    </div>
-  );
-}
-
-/** A canvas does not inherit the page's typeface: it is told. */
-const inTypeOf = (element: HTMLElement, axes: uPlot.Axis[] = []): uPlot.Axis[] => {
-  const font = `12px ${getComputedStyle(element).fontFamily}`;
-  return axes.map((axis) => ({ ...axis, font }));
-};
-
-function showAt(plot: uPlot, data: uPlot.AlignedData, index: number) {
-  const x = data[0][index];
-  if (x === undefined || x === null) return;
-  plot.setCursor({ left: plot.valToPos(x, 'x'), top: plot.over.clientHeight / 2 }, false);
-}
+import { followed, shownRange, zoomedBy, type Range } from './zoom';
 
 function Key({ figure }: { readonly figure: Figure }) {
   const hasBand = figure.series.some((s) => s.role === 'band-high');
@@ -106,21 +33,43 @@ function Key({ figure }: { readonly figure: Figure }) {
   );
 }
 
-/** One figure: its panels, a cursor for pointer and keyboard, a live readout with units, and the same values as a table. */
-export function Plot({ claimId, figure, stills }: { readonly claimId: string; readonly figure: Figure; readonly stills: readonly ReactNode[] }) {
-  const panels = useMemo(() => panelsOf(figure), [figure]);
+/** Cursor and view of one figure, shared with all of its claim that have the same horizontal axis. */
+function useView(claimId: string, figure: Figure) {
   const group = cursorGroup(claimId, figure);
   const link = useCursorLink();
-  const count = figure.x.values.length;
+  const xs = figure.x.values;
+  const axis = useMemo(() => ({ scale: axisScale(figure.x.scale, xs), whole: [xs[0] ?? 0, xs.at(-1) ?? 0] as Range }), [figure.x.scale, xs]);
+  const asked = link.ranges[group];
+  const range = useMemo(() => shownRange(asked, axis), [asked, axis]);
   const place = link.places[group];
-  const index = place === undefined ? Math.floor(count / 2) : nearestIndex(figure.x.values, place);
+  const index = place === undefined ? Math.floor(xs.length / 2) : nearestIndex(xs, place);
+  const at = (next: number) => xs[next] ?? 0;
+  const zoomTo = (next: Range | null) => link.zoomTo(group, next);
+  const settle = (next: number) => {
+    link.settle(group, at(next));
+    const moved = followed(at(next), range, axis);
+    if (moved !== range) zoomTo(moved);
+  };
+  return { range, index, settle, zoomTo, moveTo: (next: number) => link.moveTo(group, at(next)), zoomBy: (factor: number) => zoomTo(zoomedBy(factor, at(index), range, axis)) };
+}
+
+const zoomKeys: Readonly<Record<string, number>> = { '+': 0.5, '=': 0.5, '-': 2, '−': 2 };
+
+/** One figure: its panels, a cursor and a view for pointer and keyboard, a live readout with units, and the same values as a table or a file. */
+export function Plot({ claimId, figure, stills }: { readonly claimId: string; readonly figure: Figure; readonly stills: readonly ReactNode[] }) {
+  const panels = useMemo(() => panelsOf(figure), [figure]);
+  const { range, index, settle, zoomTo, moveTo, zoomBy } = useView(claimId, figure);
+  const count = figure.x.values.length;
   const readout = count > 0 ? readoutOf(figure, index) : 'no values';
-  const moveTo = (next: number) => link.moveTo(group, figure.x.values[next] ?? 0);
   const onKeyDown = (event: KeyboardEvent) => {
+    if (event.ctrlKey || event.metaKey || event.altKey) return;
+    const factor = zoomKeys[event.key];
     const next = steppedIndex(event.key, index, count, event.shiftKey);
-    if (next === null) return;
+    if (factor !== undefined) zoomBy(factor);
+    else if (event.key === '0') zoomTo(null);
+    else if (next !== null) settle(next);
+    else return;
     event.preventDefault();
-    moveTo(next);
   };
   return (
     <figure className="grid min-w-0 grid-cols-[minmax(0,1fr)] content-start gap-1.5 text-small">
@@ -133,14 +82,16 @@ export function Plot({ claimId, figure, stills }: { readonly claimId: string; re
         aria-valuemax={Math.max(0, count - 1)}
         aria-valuenow={index}
         aria-valuetext={readout}
+        aria-keyshortcuts="+ - 0"
         onKeyDown={onKeyDown}
       >
-        {panels.map((panel, i) => <PanelMount key={i} figure={figure} panel={panel} index={index} onIndex={moveTo} still={stills[i]} />)}
+        {panels.map((panel, i) => <PanelMount key={i} figure={figure} panel={panel} index={index} range={range} onIndex={moveTo} onChoice={settle} onRange={zoomTo} still={stills[i]} />)}
       </div>
       <div className="flex flex-wrap justify-between gap-x-3 text-micro text-ink-2">
         <output className="text-ink">{readout}</output>
         <span className="ml-auto">{figure.x.label}{figure.x.unit && <>, <UnitLabel unit={figure.x.unit} /></>}</span>
       </div>
+      <PlotTools figure={figure} range={range} onZoom={zoomBy} onReset={() => zoomTo(null)} />
       <ValuesTable figure={figure} />
     </figure>
   );

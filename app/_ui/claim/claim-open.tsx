@@ -1,5 +1,6 @@
 'use client';
-import { createContext, useContext, useEffect, useState, type ReactNode } from 'react';
+import { parseAsArrayOf, parseAsString, useQueryState } from 'nuqs';
+import { createContext, useCallback, useContext, useEffect, useMemo, useRef, type ReactNode } from 'react';
 import { Icon } from '../primitives/icon';
 
 interface OpenState {
@@ -10,18 +11,46 @@ const Open = createContext<OpenState>({ open: true, toggle: () => undefined });
 
 export const useClaimOpen = (): boolean => useContext(Open).open;
 
-/** Holds whether one claim is open. An address that ends in the claim's id (`#C2`) opens it. */
-export function ClaimOpenState({ claimId, initially, children }: { readonly claimId: string; readonly initially: boolean; readonly children: ReactNode }) {
-  const [open, setOpen] = useState(initially);
+/** `open=C1,C3`; `open=` when all are closed that stand open at first. */
+const claimIds = parseAsArrayOf(parseAsString);
+
+const sameClaims = (a: readonly string[], b: readonly string[]): boolean => a.length === b.length && a.every((id) => b.includes(id));
+
+interface ClaimOpenStateProps {
+  readonly claimId: string;
+  /** Claims that stand open where the address says nothing. */
+  readonly initially: readonly string[];
+  readonly children: ReactNode;
+}
+
+/** Whether a claim is open stands in the address, so that a page is sent as it is seen; one that ends in the claim's id (`#C2`) opens it. */
+export function ClaimOpenState({ claimId, initially, children }: ClaimOpenStateProps) {
+  const [asked, setAsked] = useQueryState('open', claimIds);
+  const open = (asked ?? initially).includes(claimId);
+  const set = useCallback(
+    (wanted: boolean) =>
+      void setAsked((now) => {
+        const others = (now ?? initially).filter((id) => id !== claimId);
+        const next = wanted ? [...others, claimId] : others;
+        return sameClaims(next, initially) ? null : next;
+      }),
+    [claimId, initially, setAsked],
+  );
+  const latest = useRef(set);
+  useEffect(() => {
+    latest.current = set;
+  });
+  // Only on arrival: a claim that was closed by hand stays closed when the page is drawn anew.
   useEffect(() => {
     const follow = () => {
-      if (window.location.hash === `#${claimId}`) setOpen(true);
+      if (window.location.hash === `#${claimId}`) latest.current(true);
     };
     follow();
     window.addEventListener('hashchange', follow);
     return () => window.removeEventListener('hashchange', follow);
   }, [claimId]);
-  return <Open value={{ open, toggle: () => setOpen((now) => !now) }}>{children}</Open>;
+  const state = useMemo(() => ({ open, toggle: () => set(!open) }), [open, set]);
+  return <Open value={state}>{children}</Open>;
 }
 
 export function ClaimOpener({ controls, children }: { readonly controls: string; readonly children: ReactNode }) {

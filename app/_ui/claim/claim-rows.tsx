@@ -1,3 +1,4 @@
+import type { FigureOrigin } from '../charts/export/figure-words';
 import { LinkedPlots } from '../charts/linked-plots';
 import { CoverageCell } from '../verdict/coverage-cell';
 import { ClaimOpener, ClaimOpenState } from './claim-open';
@@ -6,7 +7,7 @@ import { PointCells, type PointOnScreen } from './point-row';
 import { placeOf } from './claim-heading';
 import { CopyNumber } from './print/copy-number';
 import { latexRow, latexTable } from './print/latex-row';
-import { printSourceOf } from './print/print-source';
+import { printSourceOf, sourceWords } from './print/print-source';
 import { printedSentence } from './print/printed-sentence';
 import type { ClaimHeading, RecordSlots, RecordView } from './record-view';
 import type { ResultClaim } from '@/lib/pipeline/result';
@@ -16,7 +17,8 @@ interface ClaimRowsProps {
   readonly heading: ClaimHeading;
   readonly view: RecordView;
   readonly slots: RecordSlots;
-  readonly initiallyOpen: boolean;
+  /** Ids of the claims that stand open at first. */
+  readonly initiallyOpen: readonly string[];
   readonly closed?: boolean;
 }
 
@@ -54,6 +56,11 @@ function copyOf(heading: ClaimHeading, claim: ResultClaim | undefined, point: Po
   return <CopyNumber about={point.place ? `${heading.id} at ${point.place}` : heading.id} sentence={printedSentence(printable)} row={latexTable([latexRow(printable)])} />;
 }
 
+/** What a saved picture says of where it comes from. */
+function figureOriginOf(heading: ClaimHeading, claim: ResultClaim | undefined, view: RecordView): FigureOrigin {
+  return { source: sourceWords(printSourceOf(view)), stem: `counterfoil-${view.id}-r${view.revision}`, claimId: heading.id, quantity: heading.title, place: placeOf(claim, {}) };
+}
+
 /** One claim: a tbody with a row for each point and, when opened, everything behind the number. */
 export function ClaimRows({ heading, view, slots, initiallyOpen, closed }: ClaimRowsProps) {
   const claim = view.result?.claims.find((c) => c.id === heading.id);
@@ -71,7 +78,7 @@ export function ClaimRows({ heading, view, slots, initiallyOpen, closed }: Claim
   ));
   return (
     <ClaimOpenState claimId={heading.id} initially={initiallyOpen}>
-      <LinkedPlots>
+      <LinkedPlots origin={figureOriginOf(heading, claim, view)}>
         <tbody className="claim" role="rowgroup">
           {rows}
           {openable && claim && <OpenedClaim heading={heading} claim={claim} view={view} slots={slots} ids={ids} />}

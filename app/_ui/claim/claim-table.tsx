@@ -27,7 +27,7 @@ export function ClaimTable({ view, slots = {}, open = [], closed }: ClaimTablePr
           <col className="k5" /><col className="k6" /><col className="k7" /><col className="k8" /><col />
         </colgroup>
         <ClaimTableHead />
-        {view.claims.map((heading) => <ClaimRows key={heading.id} heading={heading} view={view} slots={slots} initiallyOpen={open.includes(heading.id)} closed={closed} />)}
+        {view.claims.map((heading) => <ClaimRows key={heading.id} heading={heading} view={view} slots={slots} initiallyOpen={open} closed={closed} />)}
       </table>
     </div>
   );

@@ -1,4 +1,5 @@
-import { createElement } from 'react';
+import { NuqsTestingAdapter } from 'nuqs/adapters/testing';
+import { createElement, type ReactElement } from 'react';
 import { renderToStaticMarkup } from 'react-dom/server';
 import { describe, expect, it } from 'vitest';
 import { ClaimTable } from '@/app/_ui/claim/claim-table';
@@ -7,7 +8,9 @@ import type { RecordView } from '@/app/_ui/claim/record-view';
 import { visiblePoints } from '@/app/_ui/claim/visible-points';
 import { must, recordFixture, resultFixture } from './fixtures/result';
 
-const table = (view: RecordView, open: readonly string[] = []) => renderToStaticMarkup(createElement(ClaimTable, { view, open }));
+/** A page at an address, as the server draws it. */
+const at = (searchParams: string, page: ReactElement) => renderToStaticMarkup(<NuqsTestingAdapter searchParams={searchParams}>{page}</NuqsTestingAdapter>);
+const table = (view: RecordView, open: readonly string[] = [], address = '') => at(address, createElement(ClaimTable, { view, open }));
 const rowsOf = (html: string, id: string) => html.slice(html.indexOf(`id="${id}"`)).split('</tr>')[0] ?? '';
 const text = (html: string) => html.replace(/<[^>]+>/g, ' ').replace(/\s+/g, ' ');
 
@@ -23,7 +26,7 @@ describe('the claim table', () => {
   });
   it('keeps its roles, which style sheets that stack it would strip', () => {
     for (const role of ['table', 'rowgroup', 'row', 'columnheader', 'rowheader', 'cell']) expect(html).toContain(`role="${role}"`);
-    const own = renderToStaticMarkup(createElement(ClaimTable, { view: recordFixture, closed: true }));
+    const own = at('', createElement(ClaimTable, { view: recordFixture, closed: true }));
     expect((own.match(/<(td|th)\b/g) ?? []).length).toBeGreaterThan(80);
     expect((own.match(/<(td|th)\b(?![^>]*(role=|aria-hidden))/g) ?? []).length).toBe(0);
   });
@@ -57,9 +60,14 @@ describe('the claim table', () => {
     expect(during).toContain('aria-busy="true"');
     expect(text(during)).toContain('Route B, 64 %');
   });
+  it('offers sentence and row of every computed number, and none in a summary', () => {
+    expect(html.match(/Copy the sentence of C1 at 60 M⊙/g)).toHaveLength(1);
+    expect(html.match(/Copy the LaTeX row/g)?.length).toBeGreaterThanOrEqual(9);
+    expect(at('', createElement(ClaimTable, { view: recordFixture, closed: true }))).not.toContain('Copy the');
+  });
   it('gives desk pages a place beside each number and under each opened claim', () => {
     const slots = { anchor: (claim: string, point: number) => createElement('a', { href: `#t-${claim}-${point}` }, 'thread'), action: (claim: string) => createElement('button', null, `vary ${claim}`) };
-    const desk = renderToStaticMarkup(createElement(ClaimTable, { view: recordFixture, slots }));
+    const desk = at('', createElement(ClaimTable, { view: recordFixture, slots }));
     expect(desk).toContain('href="#t-C1-2"');
     expect(desk).toContain('vary C4');
   });
@@ -78,6 +86,12 @@ describe('an opened claim', () => {
   });
   it('keeps what is not available out of the shares and calls it so', () => {
     expect(text(html)).toContain('not available, not zero');
+  });
+  it('is the one that the address names, whatever stands open at first', () => {
+    const named = table(recordFixture, ['C1'], '?open=C2,C4');
+    expect(named).toMatch(/aria-expanded="false" aria-controls="C1-left/);
+    expect(named).toMatch(/aria-expanded="true" aria-controls="C2-left/);
+    expect(table(recordFixture, ['C1'], '?open=')).not.toContain('aria-expanded="true"');
   });
   it('draws a still picture of each panel, for readers without script', () => {
     expect((html.match(/preserveAspectRatio="none"/g) ?? []).length).toBeGreaterThanOrEqual(5);
@@ -102,7 +116,7 @@ describe('a long sweep', () => {
 
 describe('the record page', () => {
   it('keeps machine reading and editor’s decision in two boxes', () => {
-    const html = text(renderToStaticMarkup(createElement(RecordPage, { view: recordFixture, trail: { href: '/register', label: 'Register' } })));
+    const html = text(at('', createElement(RecordPage, { view: recordFixture, trail: { href: '/register', label: 'Register' } })));
     expect(html).toContain('What the machine reads');
     expect(html).toContain('What the editor decided');
     expect(html).toContain('Of 7 claims 3 agree, 1 differs, 1 is unsettled, 1 is not computable and 1 has routes that disagree');
