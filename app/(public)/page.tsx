@@ -1,15 +1,22 @@
 import type { Metadata } from 'next';
 import { LinkButton } from '../_ui/primitives/link-button';
 import { loadActor, orNotFound } from '@/lib/http/page-guard';
-import { listRecords } from '@/lib/services/records/list-records';
+import { readRegister } from '@/lib/services/records/read-register';
 import { HowARecordComesToBe, WhatVerifiedMeans } from './how-it-comes';
-import { NewestRecord, NewestRecords } from './newest-records';
+import { LiveRecord, NewestRecords } from './newest-records';
+import { WhatIsRecomputed } from './what-is-recomputed';
 
-export const metadata: Metadata = { title: { absolute: 'Counterfoil: every number has two halves' } };
+export const metadata: Metadata = {
+  title: { absolute: 'Counterfoil: every number has two halves' },
+  description: 'Numbers about gravitational waveforms, recomputed by two routes from the authors’ own files, questioned by referees, entered by an editor.',
+  alternates: { types: { 'application/atom+xml': [{ url: '/register/feed.atom', title: 'Records as a feed' }] } },
+};
 
 export default async function Landing() {
   const actor = await loadActor();
-  const rows = orNotFound(await listRecords(actor));
+  const newest = orNotFound(await readRegister(actor, {}, 5));
+  // A struck or lapsed record stays in the register; it is no example of one that holds.
+  const standing = orNotFound(await readRegister(actor, { standing: 'entered' }, 1));
   return (
     <>
       <div className="wrap py-8 stack:py-14">
@@ -25,10 +32,11 @@ export default async function Landing() {
             </div>
           </div>
         </div>
-        <NewestRecord actor={actor} row={rows.find((row) => row.standing === 'entered')} />
+        <LiveRecord actor={actor} row={standing.rows[0]} />
       </div>
       <HowARecordComesToBe />
-      <NewestRecords rows={rows.slice(0, 5)} total={rows.length} />
+      <WhatIsRecomputed />
+      <NewestRecords rows={newest.rows} total={newest.everything} />
       <WhatVerifiedMeans />
     </>
   );

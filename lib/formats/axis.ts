@@ -1,4 +1,5 @@
-const evenTo = 1e-5;
+/** Steps within this of one another are one step. */
+export const EVEN_TO = 1e-5;
 
 /**
  * The one step of an evenly sampled record (settings.md rule 2.1), or null.
@@ -8,7 +9,7 @@ const evenTo = 1e-5;
 export function uniformStepOf(axis: Float64Array): number | null {
   const n = axis.length;
   const step = (axis[n - 1]! - axis[0]!) / (n - 1);
-  for (let i = 1; i < n; i++) if (!(Math.abs(axis[i]! - axis[i - 1]! - step) <= evenTo * step)) return null;
+  for (let i = 1; i < n; i++) if (!(Math.abs(axis[i]! - axis[i - 1]! - step) <= EVEN_TO * step)) return null;
   return step;
 }
 

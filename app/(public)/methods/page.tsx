@@ -25,10 +25,11 @@ export default async function Methods() {
             <li key={state} className="grid items-center gap-3 py-2.5 shadow-[inset_0_1px_var(--hair)] sm:grid-cols-[172px_1fr]"><span><VerdictChip state={state} /></span><span>{verdictLooks[state].meaning}</span></li>
           ))}
         </ul>
+        <p className="mt-4 max-w-measure text-ui"><Link href="/#means" className="inline-flex min-h-8 items-center">What verified means here, and what it does not</Link></p>
       </section>
       <section className="mt-10" aria-labelledby="quantities-h">
         <h2 id="quantities-h">Quantities</h2>
-        <p className="mt-2 max-w-measure text-ink-2">One page each: the equation, both routes, the settings and what they change, the sources, the limits.</p>
+        <p className="mt-2 max-w-measure text-ink-2">One page each: the equation, both routes, the settings and what they change, the sources, the limits. What all of them share stands under <Link href="/methods/conventions">conventions</Link>, every word in the <Link href="/methods/glossary">glossary</Link>.</p>
         <ul className="mt-4 grid gap-x-10 stack:grid-cols-2">
           {pages.map((page) => (
             <li key={page.id} className="py-3 shadow-[inset_0_1px_var(--hair)]">

@@ -2,8 +2,9 @@ import type { ReactNode } from 'react';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import { Icon } from '@/app/_ui/primitives/icon';
+import { quantityWord } from '@/app/views/quantity-word';
 import type { RegisterChoices, RegisterQuery } from '@/lib/services/records/register-query';
-import { noiseWord, orderChoices, quantityWord, standingChoices, verdictChoices } from './filter-words';
+import { noiseWord, orderChoices, standingChoices, verdictChoices } from './filter-words';
 
 interface FilterFormProps {
   readonly query: RegisterQuery;

@@ -1,6 +1,5 @@
 import { RECORD_STANDINGS, RECORD_STANDING_WORDS } from '@/lib/badges/standing';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
-import { quantities } from '@/lib/engine/quantities/registry';
 
 interface Choice {
   readonly value: string;
@@ -28,9 +27,6 @@ const labelIn = (choices: readonly Choice[], value: string): string => choices.f
 export const verdictWord = (verdict: string): string => labelIn(verdictChoices, verdict);
 export const standingWord = (standing: string): string => labelIn(standingChoices, standing);
 export const orderWord = (order: string): string => labelIn(orderChoices, order);
-
-/** A quantity of an older or newer engine is still named, by its id. */
-export const quantityWord = (id: string): string => quantities.get(id)?.title ?? id.replaceAll('-', ' ').replace(/^./, (c) => c.toUpperCase());
 
 export function noiseWord(id: string): string {
   if (id === 'attached') return 'Attached by the authors';

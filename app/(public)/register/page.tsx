@@ -1,4 +1,5 @@
 import type { Metadata } from 'next';
+import Link from 'next/link';
 import { cache } from 'react';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { Notice } from '@/app/_ui/primitives/notice';
@@ -36,7 +37,7 @@ export default async function Register({ searchParams }: RegisterProps) {
   return (
     <div className="wrap pt-10">
       <h1>Register</h1>
-      <p className="mt-1 max-w-measure text-ink-2">Claims that were recomputed from their own files, questioned by referees and entered by an editor. Nothing is ever removed: a struck record stays here, marked as such.</p>
+      <p className="mt-1 max-w-measure text-ink-2">Claims that were recomputed from their own files, questioned by referees and entered by an editor. Nothing is ever removed: a <Link href="/methods/glossary#struck">struck</Link> record stays here, marked as such.</p>
       <FilterForm query={view.query} choices={view.choices} filtersOn={tags.length - (view.query.ask.text === undefined ? 0 : 1)} />
       {view.problems.length > 0 && <NotUnderstood problems={view.problems} />}
       {view.everything === 0 ? <NoRecordYet /> : <Results view={view} tags={tags} />}

@@ -1,6 +1,7 @@
 import { formatDay } from '@/app/views/dates';
+import { quantityWord } from '@/app/views/quantity-word';
 import { registerParams, usualOrder, type RegisterAsk, type RegisterOrder, type RegisterQuery } from '@/lib/services/records/register-query';
-import { noiseWord, quantityWord, standingWord, verdictWord } from './filter-words';
+import { noiseWord, standingWord, verdictWord } from './filter-words';
 
 const withParams = (path: string, query: RegisterQuery): string => {
   const params = registerParams(query);

@@ -3,10 +3,11 @@ import Link from 'next/link';
 import { VerdictStrip } from '@/app/_ui/verdict/verdict-chip';
 import type { VerdictState } from '@/app/_ui/verdict/verdict-words';
 import { formatDay } from '@/app/views/dates';
+import { quantityWord } from '@/app/views/quantity-word';
 import { RECORD_STANDING_WORDS } from '@/lib/badges/standing';
 import { isVerdict } from '@/lib/services/records/register-words';
 import type { RegisterRow } from '@/lib/services/records/record-view';
-import { noiseWord, quantityWord } from './filter-words';
+import { noiseWord } from './filter-words';
 import { SortHead, type TableOrder } from './sort-head';
 
 const asState = (verdict: string): VerdictState => (isVerdict(verdict) ? verdict : 'waiting');
@@ -39,16 +40,16 @@ export function RegisterTable({ rows, caption = 'Records, the newest entry first
 
 function Row({ row }: { readonly row: RegisterRow }) {
   return (
-    <tr role="row" className="align-top shadow-[inset_0_1px_var(--hair)] max-sm:grid max-sm:gap-1 max-sm:py-3 [&>*]:py-3 max-sm:[&>*]:py-0">
-      <th role="rowheader" scope="row" className="pr-6 text-left font-normal">
+    <tr role="row" className="align-top shadow-[inset_0_1px_var(--hair)] max-sm:grid max-sm:grid-cols-[minmax(0,1fr)_auto] max-sm:gap-x-4 max-sm:gap-y-1 max-sm:py-3 [&>*]:py-3 max-sm:[&>*]:py-0">
+      <th role="rowheader" scope="row" className="pr-6 text-left font-normal max-sm:col-span-2 max-sm:pr-0">
         <Link href={`/records/${row.id}` as Route} className={`font-serif text-[17px]/[24px] font-semibold text-ink no-underline hover:underline ${row.standing === 'struck' ? 'line-through' : ''}`}>{row.title}</Link>
         <span className="block text-small text-ink-2">{row.authors.join(', ')}</span>
         <span className="block text-small text-ink-2 mid:hidden">{[...row.quantities.map(quantityWord), ...curves(row)].join(', ')}</span>
       </th>
       <td role="cell" className="pr-6 text-ui max-mid:hidden">{row.quantities.map(quantityWord).join(', ')}<span className="block text-small text-ink-2">{curves(row).join('; ') || 'no curve needed'}</span></td>
       <td role="cell" className="pr-6"><VerdictStrip verdicts={row.verdicts.map((verdict, i) => ({ id: `claim ${i + 1}`, verdict: asState(verdict) }))} /></td>
-      <td role="cell" className="pr-6 text-ui"><Standing row={row} /></td>
-      <td role="cell" className="whitespace-nowrap sm:text-right">{formatDay(row.enteredOn)}<span className="block text-small text-ink-2">revision {row.revision}</span></td>
+      <td role="cell" className="pr-6 text-ui max-sm:pr-0 max-sm:text-right"><Standing row={row} /></td>
+      <td role="cell" className="whitespace-nowrap max-sm:col-span-2 max-sm:text-ui sm:text-right">{formatDay(row.enteredOn)}<span className="text-small text-ink-2 max-sm:ml-3 sm:block">revision {row.revision}</span></td>
     </tr>
   );
 }

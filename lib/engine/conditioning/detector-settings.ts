@@ -1,9 +1,10 @@
+import { houseValues } from '@/lib/engine/contract/house-values';
 import type { DeclaredSettings, MaximiseOver, Response, SettingName } from '@/lib/engine/contract/settings';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Band, Side } from '@/lib/engine/contract/route';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { MSUN_PER_MPC, MSUN_S } from '@/lib/engine/units/constants';
-import { houseCosmology, luminosityDistanceMpc, redshiftAt, type Cosmology } from '@/lib/engine/units/cosmology';
+import { luminosityDistanceMpc, redshiftAt, type Cosmology } from '@/lib/engine/units/cosmology';
 import type { ConditionedWaveform } from './condition-waveform';
 import { nyquistFrequency } from './nyquist-frequency';
 
@@ -46,7 +47,6 @@ export interface DetectorPoint {
 
 /** Stands in where a distance cancels. */
 export const ANY_DISTANCE_MPC = 1000;
-const HOUSE_THRESHOLD = 8;
 
 export const canRescale = (w: Waveform): boolean => w.unit === 'M' || (w.ownTotalMassMsun !== null && w.ownDistanceMpc !== null);
 
@@ -91,7 +91,7 @@ interface Scale {
 
 function scaleOf({ declared, a, b, traits }: PointRequest): Scale {
   const waveforms = [a.given, ...(b ? [b.given] : [])];
-  const cosmology = declared.cosmology ?? houseCosmology;
+  const cosmology = declared.cosmology ?? houseValues.cosmology;
   const massMsun = declared.totalMassMsun ?? null;
   const massFrame = massFrameOf(declared, waveforms, traits);
   const fromRedshift =
@@ -106,11 +106,11 @@ function scaleOf({ declared, a, b, traits }: PointRequest): Scale {
 
 const sideOf = (c: ConditionedWaveform, declared: DeclaredSettings, scale: Scale): Side => ({
   waveform: c.used(declared.lMax ?? null),
-  taper: c.taper(declared.taper ?? 'auto', declared.lMax ?? null).window,
+  taper: c.taper(declared.taper ?? houseValues.taper, declared.lMax ?? null).window,
   secondsPerUnit: secondsPerUnit(c.given, scale.massMsun, scale.redshift),
   strainPerUnit: strainPerUnit(c.given, scale.massMsun, scale.redshift, scale.distanceMpc),
-  inclinationRad: declared.inclinationRad ?? 0,
-  azimuthRad: declared.azimuthRad ?? 0,
+  inclinationRad: declared.inclinationRad ?? houseValues.inclinationRad,
+  azimuthRad: declared.azimuthRad ?? houseValues.azimuthRad,
 });
 
 /** Upper edge when none is declared: the lower of the curve's end and the lowest Nyquist frequency in use. */
@@ -143,13 +143,13 @@ function assemble(request: PointRequest, scale: Scale): DetectorPoint {
     ...scale,
     band: { noise, fLowHz: declared.fLowHz ?? noise.fLowHz, fHighHz: declared.fHighHz ?? defaultTopHz(noise, sides) },
     maximise: traits.maximise === null ? [] : (declared.maximise ?? traits.maximise),
-    response: declared.response ?? 'plus',
-    average: declared.average ?? 'optimal',
-    detectors: declared.detectors ?? 1,
-    armAngleDeg: declared.armAngleDeg ?? 90,
-    threshold: declared.threshold ?? HOUSE_THRESHOLD,
-    cosmology: declared.cosmology ?? houseCosmology,
-    templateMassRange: declared.templateMassRange ?? [0.5, 2],
+    response: declared.response ?? houseValues.response,
+    average: declared.average ?? houseValues.average,
+    detectors: declared.detectors ?? houseValues.detectors,
+    armAngleDeg: declared.armAngleDeg ?? houseValues.armAngleDeg,
+    threshold: declared.threshold ?? houseValues.threshold,
+    cosmology: declared.cosmology ?? houseValues.cosmology,
+    templateMassRange: declared.templateMassRange ?? houseValues.templateMassRange,
     a,
     b,
   };

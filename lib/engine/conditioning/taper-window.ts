@@ -4,9 +4,9 @@ import { dominantMode, peakModulus } from './dominant-mode';
 import { cyclesFrom, type CycleClock } from './cycle-clock';
 
 /** An end is open when a mode in use there exceeds this fraction of the largest peak (rule 2.4). */
-const OPEN_FRACTION = 1e-3;
-const START_CYCLES = 2;
-const END_CYCLES = 1;
+export const OPEN_FRACTION = 1e-3;
+export const START_CYCLES = 2;
+export const END_CYCLES = 1;
 
 export interface TaperMeasure {
   readonly window: TaperWindow;

@@ -1,3 +1,4 @@
+import { houseValues } from '../contract/house-values';
 import type { UsedSetting } from '../contract/measurement';
 import type { DeclaredSettings, ModeIndex, SettingName } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
@@ -36,12 +37,12 @@ export function binaryOfClaim(declared: DeclaredSettings, waveform: Waveform): B
 export function energySettings(declared: DeclaredSettings, waveform: Waveform, record: RadiationRecord): EnergySettings {
   const startM = declared.startM ?? waveform.junkEndM ?? record.axis[0]!;
   return {
-    modes: declared.modes ?? 'all',
+    modes: declared.modes ?? houseValues.modes,
     lMax: declared.lMax ?? null,
     startM,
     floor: record.variable === 'psi4' ? (declared.integrationFloor ?? defaultFloor(record, startM)) : null,
-    rule: declared.includeEnergyBeforeStart ?? false,
-    normaliseBy: declared.normaliseBy ?? 'M',
+    rule: declared.includeEnergyBeforeStart ?? houseValues.includeEnergyBeforeStart,
+    normaliseBy: declared.normaliseBy ?? houseValues.normaliseBy,
     binary: binaryOfClaim(declared, waveform),
   };
 }

@@ -1,3 +1,4 @@
+import { houseValues } from '../contract/house-values';
 import type { Finding } from '../contract/finding';
 import type { MeasureRequest } from '../contract/quantity';
 import type { DeclaredSettings } from '../contract/settings';
@@ -58,7 +59,7 @@ export function preparerOf(completed: Waveform, claim: MeasureRequest): (at: At)
     const key = String(declared.lMax);
     const known = records.get(key);
     if (known) return known;
-    const chosen = selectModes(completed, { modes: declared.modes ?? 'all', lMax: declared.lMax ?? null, withZeroM: true }).waveform;
+    const chosen = selectModes(completed, { modes: declared.modes ?? houseValues.modes, lMax: declared.lMax ?? null, withZeroM: true }).waveform;
     const found = radiationRecord(chosen);
     const made = 'saw' in found ? stop('engine/no-signal', name, `An energy cannot be computed from ${found.saw}.`, found.fix) : found;
     records.set(key, made);

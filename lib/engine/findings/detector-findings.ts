@@ -2,6 +2,7 @@
  * Findings: what the data and settings of a claim show before or beside its number, in a
  * physicist's words, with figures and place. They never change a number.
  */
+import { houseValues } from '@/lib/engine/contract/house-values';
 import type { DetectorPoint } from '@/lib/engine/conditioning/detector-settings';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import { nyquistFrequency } from '@/lib/engine/conditioning/nyquist-frequency';
@@ -149,7 +150,7 @@ const pointsWord = (affected: readonly Affected[]): string => {
 /** Cycles per unit of the axis where the start ramp ends; a frequency-domain file starts at its first frequency. */
 export function startFrequency(c: ConditionedWaveform, point: DetectorPoint): number | null {
   if (c.given.domain === 'frequency') return c.given.axis[0]!;
-  return c.taper(point.declared.taper ?? 'auto', point.declared.lMax ?? null).frequencyAtRampEnd;
+  return c.taper(point.declared.taper ?? houseValues.taper, point.declared.lMax ?? null).frequencyAtRampEnd;
 }
 
 export const startsInBand = (c: ConditionedWaveform, point: DetectorPoint, side: Side): boolean => {
@@ -185,7 +186,7 @@ export function taperRoom(c: ConditionedWaveform, points: readonly Affected[]): 
   const measured = points.map(({ point, side }) => ({
     point,
     side,
-    taper: c.taper(point.declared.taper ?? 'auto', point.declared.lMax ?? null),
+    taper: c.taper(point.declared.taper ?? houseValues.taper, point.declared.lMax ?? null),
   }));
   if (measured.some(({ taper }) => taper.tooShort)) {
     return {

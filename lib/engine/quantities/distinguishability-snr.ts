@@ -1,3 +1,4 @@
+import { houseValues } from '@/lib/engine/contract/house-values';
 import { pairSettings, pairSweeps } from './detector/allowed-settings';
 import { detectorQuantity } from './detector/detector-quantity';
 import { distinguishabilityRecipe } from './detector/match-recipe';
@@ -20,7 +21,7 @@ export const distinguishabilitySnr = detectorQuantity(
     roles: ['a', 'b'],
     settings: [...pairSettings, 'parameters'],
     sweepable: pairSweeps,
-    naturalTolerance: (value, declared) => 0.5 * mismatchTolerance((declared?.parameters ?? 1) / (2 * value * value)) * Math.abs(value),
+    naturalTolerance: (value, declared) => 0.5 * mismatchTolerance((declared?.parameters ?? houseValues.parameters) / (2 * value * value)) * Math.abs(value),
     formula: String.raw`\rho_{\mathrm{ind}}=\sqrt{\frac{D}{2\,(1-\mathcal{M})}}`,
   },
   distinguishabilityRecipe,

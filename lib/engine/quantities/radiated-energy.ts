@@ -1,10 +1,11 @@
+import { houseValues } from '../contract/house-values';
 import type { DeclaredSettings } from '../contract/settings';
 import type { Quantity, QuantityInputs } from '../contract/quantity';
 import { binaryOfClaim } from '../energy/energy-settings';
 import { measureEnergy } from '../energy/measure-energy';
 
 const needsMassRatio = (inputs: QuantityInputs, declared: DeclaredSettings): boolean =>
-  (declared.includeEnergyBeforeStart ?? false) !== false && inputs.of.a !== undefined && binaryOfClaim(declared, inputs.of.a) === null;
+  (declared.includeEnergyBeforeStart ?? houseValues.includeEnergyBeforeStart) !== false && inputs.of.a !== undefined && binaryOfClaim(declared, inputs.of.a) === null;
 
 /**
  * Energy radiated in gravitational waves between startM and the end of the record (Q12).

@@ -1,3 +1,4 @@
+import { houseValues } from '@/lib/engine/contract/house-values';
 import type { SettingName } from '@/lib/engine/contract/settings';
 
 /**
@@ -28,6 +29,14 @@ export interface SettingRow {
 
 const row = (name: SettingName, shape: SettingShape, unit: string, houseDefault: string, meaning: string): SettingRow => ({ name, shape, unit, houseDefault, meaning });
 
+/** A default as the engine has it, in the spelling of a sheet. */
+function said(name: keyof typeof houseValues): string {
+  const value: unknown = houseValues[name];
+  if (Array.isArray(value)) return value.every((part) => typeof part === 'number') ? `[${value.join(', ')}]` : value.join(', ');
+  return String(value);
+}
+const { h0, omegaM } = houseValues.cosmology;
+
 const rows: readonly SettingRow[] = [
   row('totalMassMsun', { kind: 'number', min: 0.1, max: 1e10 }, 'M☉', 'required for waveforms in M; else the file’s own', 'Total mass of the binary: stretches time and scales amplitude.'),
   row('massFrame', { kind: 'choice', options: ['detector', 'source'] }, '', 'detector; source for horizons where the mass can be rescaled', 'What the mass means; a source-frame mass enters the response as M(1+z).'),
@@ -35,26 +44,26 @@ const rows: readonly SettingRow[] = [
   row('distanceMpc', { kind: 'number', min: 1e-3, max: 1e6 }, 'Mpc', 'required for loudness of waveforms in M; else the file’s own', 'Luminosity distance.'),
   row('fLowHz', { kind: 'number', above: 0 }, 'Hz', 'first frequency of the noise curve', 'Lower edge of the band, exact.'),
   row('fHighHz', { kind: 'number', above: 0 }, 'Hz', 'the lower of the noise curve’s end and the lowest Nyquist frequency', 'Upper edge of the band, exact.'),
-  row('maximise', { kind: 'subset', options: ['time', 'phase', 'polarisation', 'inclination', 'templateMass'] }, '', 'by quantity', 'What the second waveform may be moved in, jointly.'),
-  row('inclinationRad', { kind: 'number', min: 0, max: Math.PI }, 'rad', '0 (face-on)', 'Inclination of the line of sight.'),
-  row('azimuthRad', { kind: 'number', min: -2 * Math.PI, max: 2 * Math.PI }, 'rad', '0', 'Azimuth of the line of sight.'),
-  row('response', { kind: 'response' }, '', 'plus; complex for mode content and degeneracy', 'Which polarisation the detector sees, or its two factors.'),
-  row('modes', { kind: 'modes' }, '', 'all', 'The modes used.'),
+  row('maximise', { kind: 'subset', options: ['time', 'phase', 'polarisation', 'inclination', 'templateMass'] }, '', said('maximise'), 'What the second waveform may be moved in, jointly.'),
+  row('inclinationRad', { kind: 'number', min: 0, max: Math.PI }, 'rad', `${said('inclinationRad')} (face-on)`, 'Inclination of the line of sight.'),
+  row('azimuthRad', { kind: 'number', min: -2 * Math.PI, max: 2 * Math.PI }, 'rad', said('azimuthRad'), 'Azimuth of the line of sight.'),
+  row('response', { kind: 'response' }, '', said('response'), 'Which polarisation the detector sees, or its two factors.'),
+  row('modes', { kind: 'modes' }, '', said('modes'), 'The modes used.'),
   row('lMax', { kind: 'integer', min: 2, max: 12 }, '', 'the highest given', 'Leaves out modes of higher ℓ.'),
-  row('average', { kind: 'choice', options: ['optimal', 'sky', 'sky-orientation', 'volume'] }, '', 'optimal', 'Over which directions the loudness is averaged.'),
-  row('detectors', { kind: 'integer', min: 1, max: 10 }, '', '1', 'Equal detectors in one place: loudness times √N.'),
-  row('armAngleDeg', { kind: 'number', min: 1, max: 90 }, '°', '90', 'Opening angle of the detector’s arms.'),
-  row('taper', { kind: 'taper', min: 0.1, max: 10 }, '', 'auto (1)', 'Multiplies both ramp lengths of the taper.'),
-  row('threshold', { kind: 'number', above: 0 }, '', '8 for loudness', 'The loudness, or the match, at which something counts as seen.'),
-  row('cosmology', { kind: 'cosmology' }, '', 'h0 67.4 km/s/Mpc, omegaM 0.315, flat', 'Expansion used between redshift and distance.'),
+  row('average', { kind: 'choice', options: ['optimal', 'sky', 'sky-orientation', 'volume'] }, '', said('average'), 'Over which directions the loudness is averaged.'),
+  row('detectors', { kind: 'integer', min: 1, max: 10 }, '', said('detectors'), 'Equal detectors in one place: loudness times √N.'),
+  row('armAngleDeg', { kind: 'number', min: 1, max: 90 }, '°', said('armAngleDeg'), 'Opening angle of the detector’s arms.'),
+  row('taper', { kind: 'taper', min: 0.1, max: 10 }, '', `${said('taper')} (1)`, 'Multiplies both ramp lengths of the taper.'),
+  row('threshold', { kind: 'number', above: 0 }, '', `${said('threshold')} for loudness`, 'The loudness, or the match, at which something counts as seen.'),
+  row('cosmology', { kind: 'cosmology' }, '', `h0 ${h0} km/s/Mpc, omegaM ${omegaM}, flat`, 'Expansion used between redshift and distance.'),
   row('startM', { kind: 'number' }, 'M', 'the end of the start-up burst, else the first sample', 'Start of integrals over time.'),
   row('window', { kind: 'interval' }, 'M', 'by quantity', 'Interval of time that is used.'),
   row('integrationFloor', { kind: 'number', above: 0 }, 'rad/M', 'half of ω₂₂ at the start', 'Lowest frequency by which a time integral divides.'),
-  row('includeEnergyBeforeStart', { kind: 'choice', options: [false, true, 'removed'] }, '', 'false', 'Adds what was radiated before the start.'),
-  row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', 'by quantity', 'The mass to which the number is referred.'),
-  row('parameters', { kind: 'integer', min: 1, max: 20 }, '', '1', 'Number of parameters in the criterion.'),
-  row('rateLaw', { kind: 'choice', options: ['euclidean', 'comoving'] }, '', 'euclidean', 'How loudness becomes volume.'),
-  row('templateMassRange', { kind: 'interval', min: 0.01, max: 100 }, '× M', '[0.5, 2]', 'Range of the template’s mass when it is maximised over.'),
+  row('includeEnergyBeforeStart', { kind: 'choice', options: [false, true, 'removed'] }, '', said('includeEnergyBeforeStart'), 'Adds what was radiated before the start.'),
+  row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', said('normaliseBy'), 'The mass to which the number is referred.'),
+  row('parameters', { kind: 'integer', min: 1, max: 20 }, '', said('parameters'), 'Number of parameters in the criterion.'),
+  row('rateLaw', { kind: 'choice', options: ['euclidean', 'comoving'] }, '', said('rateLaw'), 'How loudness becomes volume.'),
+  row('templateMassRange', { kind: 'interval', min: 0.01, max: 100 }, '× M', said('templateMassRange'), 'Range of the template’s mass when it is maximised over.'),
   row('massRatio', { kind: 'number', above: 0, max: 1e6 }, '', 'the waveform’s own', 'Heavier over lighter mass, q ≥ 1.'),
   row('chi1z', { kind: 'number', min: -1, max: 1 }, '', 'the waveform’s own', 'Spin of the heavier body along the orbital angular momentum.'),
   row('chi2z', { kind: 'number', min: -1, max: 1 }, '', 'the waveform’s own', 'Spin of the lighter body along the orbital angular momentum.'),

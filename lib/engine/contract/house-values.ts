@@ -1,0 +1,26 @@
+import { houseCosmology } from '../units/cosmology';
+import type { DeclaredSettings } from './settings';
+
+/**
+ * What stands for a setting that is not declared, wherever that is one value for every claim. The
+ * engine computes with these and the settings table prints them: a default has no second spelling.
+ * Defaults that are read from the files (a band's edges, a start) have no row here.
+ */
+export const houseValues = {
+  maximise: ['time', 'phase'],
+  inclinationRad: 0,
+  azimuthRad: 0,
+  response: 'plus',
+  modes: 'all',
+  average: 'optimal',
+  detectors: 1,
+  armAngleDeg: 90,
+  taper: 'auto',
+  threshold: 8,
+  cosmology: houseCosmology,
+  includeEnergyBeforeStart: false,
+  normaliseBy: 'M',
+  parameters: 1,
+  rateLaw: 'euclidean',
+  templateMassRange: [0.5, 2],
+} as const satisfies DeclaredSettings;
