@@ -39,11 +39,6 @@ export const WRONG_CODES = { atMost: 10, restsS: 15 * 60 } as const;
  * ours (`current-actor.ts`), because a page cannot renew a cookie and would sign people out mid-work.
  */
 export function createAuth({ database: db, env, post, orcid }: AuthParts) {
-  const secure = env.APP_URL.startsWith('https:');
-  const cookie = (name: string) => ({
-    name: `${secure ? '__Host-' : ''}counterfoil.${name}`,
-    attributes: { httpOnly: true, secure, sameSite: 'lax' as const, path: '/' },
-  });
   return betterAuth({
     baseURL: env.APP_URL,
     basePath: '/api/auth',
@@ -92,14 +87,7 @@ export function createAuth({ database: db, env, post, orcid }: AuthParts) {
       sendVerificationEmail: async ({ user, url }) => (isPlaceholderAddress(user.email) ? undefined : post({ kind: 'verify-address', to: user.email, name: user.name, url })),
     },
     rateLimit: signInLimits(env),
-    advanced: {
-      database: { generateId: 'uuid' },
-      useSecureCookies: false, // the names below carry the stronger __Host- prefix themselves
-      cookies: { session_token: cookie('session'), ...Object.fromEntries(['dont_remember', 'session_data', 'account_data', 'two_factor', 'trust_device', 'state'].map((name) => [name, cookie(name)])) },
-      ipAddress: env.TRUSTED_PROXY
-        ? { ipAddressHeaders: ['x-forwarded-for'], trustedProxies: [env.TRUSTED_PROXY] }
-        : { ipAddressHeaders: ['x-counterfoil-client-address'] },
-    },
+    advanced: placesAndCookies(env),
     logger: { level: 'error' },
   });
 }
@@ -115,6 +103,23 @@ const secondFactor = () =>
     twoFactorCookieMaxAge: CHALLENGE_LIVES_S,
     accountLockout: { enabled: true, maxFailedAttempts: WRONG_CODES.atMost, durationSeconds: WRONG_CODES.restsS },
   });
+
+/** Ids, and cookies that a script cannot read; behind TLS they carry the prefix that ties them to this very host. */
+function placesAndCookies(env: AuthParts['env']) {
+  const secure = env.APP_URL.startsWith('https:');
+  const cookie = (name: string) => ({
+    name: `${secure ? '__Host-' : ''}counterfoil.${name}`,
+    attributes: { httpOnly: true, secure, sameSite: 'lax' as const, path: '/' },
+  });
+  return {
+    database: { generateId: 'uuid' as const },
+    useSecureCookies: false, // the names below carry the stronger __Host- prefix themselves
+    cookies: { session_token: cookie('session'), ...Object.fromEntries(['dont_remember', 'session_data', 'account_data', 'two_factor', 'trust_device', 'state'].map((name) => [name, cookie(name)])) },
+    ipAddress: env.TRUSTED_PROXY
+      ? { ipAddressHeaders: ['x-forwarded-for'], trustedProxies: [env.TRUSTED_PROXY] }
+      : { ipAddressHeaders: ['x-counterfoil-client-address'] },
+  };
+}
 
 /**
  * Per address and path. Without a configured proxy no address can be believed and all clients share

@@ -9,6 +9,7 @@ export interface RecordInputs {
   readonly id: string;
   readonly title: string;
   readonly authors: readonly string[];
+  readonly orcids?: RecordDocument['orcids'];
   readonly revision: number;
   /** UTC instant. */
   readonly enteredAt: Date;
@@ -50,6 +51,7 @@ export function buildRecord(inputs: RecordInputs): RecordDocument {
     id: inputs.id,
     title: inputs.title,
     authors: inputs.authors,
+    ...(inputs.orcids && inputs.orcids.length > 0 && { orcids: inputs.orcids }),
     revision: inputs.revision,
     enteredAt: utcDayOf(inputs.enteredAt),
     lapsesAt: lapseDay(inputs.enteredAt),

@@ -28,6 +28,7 @@ export const recordSchema = z.looseObject({
   id: z.string(),
   title: z.string(),
   authors: z.array(z.string()),
+  orcids: z.array(z.looseObject({ position: z.number().int().positive(), orcid: z.string() })).optional(),
   revision: z.number().int().positive(),
   enteredAt: day,
   decision: z.looseObject({ by: z.string(), role: z.literal('editor'), level: z.union([z.literal(1), z.literal(2), z.literal(3)]), remarks: z.array(z.string()) }),

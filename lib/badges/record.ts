@@ -32,6 +32,8 @@ export interface RecordDocument {
   readonly id: string;
   readonly title: string;
   readonly authors: readonly string[];
+  /** iDs that ORCID vouched for, by place in `authors` from 1; absent when there is none. One that was only typed in is never signed. */
+  readonly orcids?: readonly { readonly position: number; readonly orcid: string }[];
   readonly revision: number;
   /** UTC day. */
   readonly enteredAt: string;

@@ -1,5 +1,5 @@
 import { database } from '@/db/client';
-import { hasPassword } from '@/db/reads/accounts/ways-in';
+import { hasPassword, listOrcidLinks } from '@/db/reads/accounts/ways-in';
 import { auth } from '@/lib/auth/auth';
 import { currentSession } from '@/lib/auth/current-session';
 import type { SignedInActor } from '@/lib/policy/actor';
@@ -13,9 +13,12 @@ const SIGN_IN_AGAIN: DoorError = {
   sentence: 'This account has no password to ask for, so it asks for a sign-in of the last ten minutes. Sign out, sign in with ORCID, and come back.',
 };
 
+const LINKED_ALREADY: DoorError = { code: 'conflict', sentence: 'An ORCID iD is linked to this account already. Unlink it before you link another.' };
+
 /** Why this account may not change its second factor just now; null when it may try. A password is asked for by the library itself. */
 export async function unproven(path: string, actor: SignedInActor, headers: Headers): Promise<DoorError | null> {
   if (actor.lacks === 'confirmed-address') return { code: 'denied', sentence: LACK_SENTENCES['confirmed-address'] };
+  if (path === '/link-social' && (await listOrcidLinks(database(), actor.userId)).length > 0) return LINKED_ALREADY;
   if (path === '/change-password' || (await hasPassword(database(), actor.userId))) return null;
   const session = await currentSession(headers);
   const ageS = session ? (Date.now() - session.createdAt.getTime()) / 1000 : Infinity;

@@ -4,6 +4,7 @@ import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { reservePort } from '@/lib/tools/setup/ports.mjs';
 import { startSigner, startWeb, startWorker, waitUntilReady, type Part } from '@/lib/tools/setup/parts.mjs';
+import { startOpenIdProvider } from '@/lib/tools/fakes/openid-provider';
 import { freshDatabase, type FreshDatabase } from './database';
 import { startMailSink, startObjectStore, temporaryFolder, type TestMailSink, type TestObjectStore } from './fakes';
 
@@ -26,15 +27,17 @@ export interface TestApplication {
 
 /**
  * The built application as `npm start` runs it (web, worker, signer), against a database, an object
- * store and a mail sink of this test file's own. `npm test` has built it before.
+ * store, a mail sink and an OpenID provider of this test file's own. `npm test` has built it before.
  */
 export async function startApplication(extra: Readonly<Record<string, string>> = {}): Promise<TestApplication> {
   if (!existsSync(path.join(ROOT, '.next/BUILD_ID')))
     throw new Error('There is no build in .next; run the browser tests through `npm test`.');
   const folder = temporaryFolder('application');
-  const [database, store, mail] = await Promise.all([freshDatabase(), startObjectStore(), startMailSink()]);
+  const client = { clientId: 'counterfoil-under-test', clientSecret: randomBytes(24).toString('base64url') };
+  const [database, store, mail, openid] = await Promise.all([freshDatabase(), startObjectStore(), startMailSink(), startOpenIdProvider(client)]);
   const held = await reservePort(56_000);
-  const env = { ...process.env, ...environment(folder, database, store, mail, held.port), ...extra };
+  const orcid = { ORCID_ISSUER: openid.issuer, ORCID_CLIENT_ID: client.clientId, ORCID_CLIENT_SECRET: client.clientSecret };
+  const env = { ...process.env, ...environment(folder, database, store, mail, held.port), ...orcid, ...extra };
   const running = await startParts(env, held);
   return {
     url: `http://127.0.0.1:${held.port}`,
@@ -46,7 +49,7 @@ export async function startApplication(extra: Readonly<Record<string, string>> =
     restartWorker: running.restartWorker,
     async stop() {
       await running.stop();
-      await Promise.all([store.stop(), mail.stop(), database.drop()]);
+      await Promise.all([store.stop(), mail.stop(), openid.stop(), database.drop()]);
       rmSync(folder, { recursive: true, force: true });
     },
   };

@@ -1,28 +1,15 @@
 import Link from 'next/link';
 import type { Route } from 'next';
 import type { ReactNode } from 'react';
-import { Icon } from '../primitives/icon';
+import { OrcidLine } from './orcid-line';
 import type { RecordPerson, RecordView } from './record-view';
 
-/** An authenticated iD is shown with its sign and whole address; a typed-in one says that it is. */
-function Person({ person }: { readonly person: RecordPerson }) {
-  const address = person.orcid ? `https://orcid.org/${person.orcid}` : null;
-  return (
-    <span>
-      {person.name}
-      {address && (
-        <>
-          {' '}
-          <a href={address} className="text-ui">
-            {person.orcidAuthenticated && <Icon name="identifier" label="ORCID iD, authenticated:" className="mr-1 inline-block align-[-2px]" />}
-            {address}
-          </a>
-          {!person.orcidAuthenticated && <span className="text-ui text-ink-2"> (typed in, not authenticated)</span>}
-        </>
-      )}
-    </span>
-  );
-}
+const Person = ({ person }: { readonly person: RecordPerson }) => (
+  <span>
+    {person.name}
+    {person.orcid && <> <OrcidLine orcid={person.orcid} authenticated={person.orcidAuthenticated === true} /></>}
+  </span>
+);
 
 const affiliations = (people: readonly RecordPerson[]) => [...new Set(people.flatMap((p) => (p.affiliation ? [p.affiliation] : [])))];
 

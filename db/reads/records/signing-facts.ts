@@ -47,7 +47,7 @@ export async function findSigningFacts(reader: Reader, decisionId: string) {
   return {
     ...row,
     files: await listFiles(reader, row.revision.id),
-    authors: await listAuthorNames(reader, submissionId),
+    authors: await listAuthorsAsPrinted(reader, submissionId),
     reports: await countReportsByLetter(reader, submissionId),
     supersedes: await findNewestRecordId(reader, submissionId),
   };
@@ -62,15 +62,16 @@ const listFiles = (reader: Reader, revisionId: string) =>
     .where(eq(revisionFiles.revisionId, revisionId))
     .orderBy(asc(revisionFiles.name));
 
-async function listAuthorNames(reader: Reader, submissionId: string): Promise<string[]> {
-  const rows = await reader
-    .select({ name: users.name })
+/** Names, and the iDs that ORCID vouched for; this role reads nothing else of how anybody signs in. */
+const linkedOrcid = sql<string | null>`(select min(a.account_id) from accounts a where a.user_id = ${users.id} and a.provider_id = 'orcid')`;
+
+const listAuthorsAsPrinted = (reader: Reader, submissionId: string) =>
+  reader
+    .select({ name: users.name, orcid: linkedOrcid })
     .from(submissionPeople)
     .innerJoin(users, eq(users.id, submissionPeople.userId))
     .where(eq(submissionPeople.submissionId, submissionId))
     .orderBy(asc(submissionPeople.position));
-  return rows.map((row) => row.name);
-}
 
 /** By the referees' letters: this role cannot read who they are. */
 async function countReportsByLetter(reader: Reader, submissionId: string): Promise<number> {

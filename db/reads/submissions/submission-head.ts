@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, isNotNull } from 'drizzle-orm';
+import { and, asc, desc, eq, isNotNull, sql } from 'drizzle-orm';
 import type { Reader } from '@/db/client';
 import { users } from '@/db/schema/accounts';
 import { revisions, submissionPeople, submissions } from '@/db/schema/submissions';
@@ -20,10 +20,13 @@ export async function getSubmissionHead(reader: Reader, submissionId: string) {
   return row;
 }
 
+/** The iD that ORCID vouched for when this person linked it. */
+const linkedOrcid = sql<string | null>`(select a.account_id from accounts a where a.user_id = ${users.id} and a.provider_id = 'orcid' order by a.created_at limit 1)`;
+
 /** In printed order. */
 export const listAuthors = (reader: Reader, submissionId: string) =>
   reader
-    .select({ userId: users.id, name: users.name, affiliation: users.affiliation, role: submissionPeople.role, confirmedAt: submissionPeople.confirmedAt })
+    .select({ userId: users.id, name: users.name, affiliation: users.affiliation, orcid: linkedOrcid, typedOrcid: users.typedOrcid, role: submissionPeople.role, confirmedAt: submissionPeople.confirmedAt })
     .from(submissionPeople)
     .innerJoin(users, eq(users.id, submissionPeople.userId))
     .where(eq(submissionPeople.submissionId, submissionId))

@@ -2,7 +2,7 @@ import { getAuthTables } from 'better-auth/db';
 import { getTableColumns } from 'drizzle-orm';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { closeDatabase, database, openDatabase, useDatabase } from '@/db/client';
-import { accounts, rateLimits, sessions, users, verifications } from '@/db/schema/accounts';
+import { accounts, rateLimits, sessions, twoFactors, users, verifications } from '@/db/schema/accounts';
 import { createAuth } from '@/lib/auth/auth';
 import { currentActor } from '@/lib/auth/current-actor';
 import { hashesRunning, hashPassword, verifyPassword } from '@/lib/auth/password-hash';
@@ -40,7 +40,7 @@ const rows = async <T>(text: string, ...values: unknown[]): Promise<T[]> => (awa
 describe('tables', () => {
   it('have every column the sign-in library asks for', () => {
     const auth = createAuth({ database: database(), env: { APP_URL: ORIGIN, DEMO: true, AUTH_SECRET: 'kD82nfa-0Qmz_71pLxYw93hVtRs56bGc' }, post: async () => undefined });
-    const ours = { user: users, session: sessions, account: accounts, verification: verifications, rateLimit: rateLimits } as const;
+    const ours = { user: users, session: sessions, account: accounts, verification: verifications, rateLimit: rateLimits, twoFactor: twoFactors } as const;
     const wanted = getAuthTables(auth.options);
     expect(Object.keys(wanted).sort()).toEqual(Object.keys(ours).sort());
     for (const [name, table] of Object.entries(wanted)) {
