@@ -69,7 +69,7 @@ describe('a long file', () => {
   it('refuses to be finished with parts missing, and a part of another size', async () => {
     const early = await end(uploadId);
     expect([early.status, ((await early.json()) as { detail: string }).detail]).toEqual([412, `2 of 3 parts of ${announced.name} are not here yet. Send them first.`]);
-    expect((await put(uploadId, 1, part(1).subarray(1))).status).toBe(400);
+    expect((await put(uploadId, 1, part(1).subarray(1))).status).toBe(422);
     expect((await put(uploadId, 9, part(1))).status).toBe(404);
     expect((await begun()).upload?.arrived).toEqual([0]);
   });
@@ -107,7 +107,7 @@ describe('a long file', () => {
     const { upload } = await begun({ name: 'other.txt', bytes: 1000, sha256: createHash('sha256').update('something else').digest('hex') });
     expect((await put(upload?.id ?? '', 0, other)).status).toBe(200);
     const answer = await end(upload?.id ?? '');
-    expect(answer.status).toBe(400);
+    expect(answer.status).toBe(422);
     expect(((await answer.json()) as { detail: string }).detail).toContain(`expected ${createHash('sha256').update('something else').digest('hex')}`);
     expect(await desk.sql('select 1 from uploads')).toEqual([]);
   });
@@ -125,7 +125,7 @@ describe('a long file', () => {
   });
 
   it('longer than the limit is refused before a byte is sent', async () => {
-    expect((await announce({ ...announced, bytes: 512 * 1024 * 1024 + 1 })).status).toBe(400);
+    expect((await announce({ ...announced, bytes: 512 * 1024 * 1024 + 1 })).status).toBe(422);
   });
 
   it('that nobody came back for is cleared away by the worker, bytes and rows', async () => {
