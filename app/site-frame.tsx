@@ -26,7 +26,9 @@ export function navFor(actor: Actor): readonly NavEntry[] {
 
 const footLinks = [
   { href: '/methods', label: 'How a verdict is made' },
+  { href: '/methods/conventions', label: 'Conventions' },
   { href: '/methods/glossary', label: 'Glossary' },
+  { href: '/interface', label: 'Interface' },
 ] as const;
 
 /** Header, main and footer of every page but the one that is not there. */

@@ -1,13 +1,19 @@
 import { Server, type IncomingMessage, type ServerResponse } from 'node:http';
 import { allowedOrigins } from '@/lib/auth/allowed-origins';
+import { methodsAt } from './known-addresses';
+import { problemBody } from './problem-response';
 
 /**
- * What is turned away before the framework sees it: methods on which the framework breaks, and
- * requests for a host that is not ours (a stranger's page can point its own name at our address).
+ * What is turned away before the framework sees it: methods on which the framework breaks, requests
+ * for a host that is not ours (a stranger's page can point its own name at our address), and addresses
+ * or methods that the interface does not have, which the framework would answer with a page.
  */
 export interface Refusal {
-  readonly status: 405 | 421;
+  readonly code: 'method-not-allowed' | 'misdirected' | 'not-found';
+  readonly status: 404 | 405 | 421;
   readonly sentence: string;
+  /** The methods that are there. */
+  readonly allow?: string;
 }
 
 const METHODS: ReadonlySet<string> = new Set(['GET', 'HEAD', 'POST', 'PUT', 'PATCH', 'DELETE', 'OPTIONS']);
@@ -17,9 +23,18 @@ const HEALTH: ReadonlySet<string> = new Set(['/healthz', '/readyz']);
 type Asked = Pick<IncomingMessage, 'method' | 'url'> & { readonly host: string | undefined };
 
 export function refusalOf(asked: Asked, hosts: ReadonlySet<string>): Refusal | undefined {
-  if (!METHODS.has(asked.method ?? '')) return { status: 405, sentence: `The method ${asked.method} is not answered here.` };
-  if (HEALTH.has(asked.url ?? '') || hosts.has(asked.host?.toLowerCase() ?? '')) return undefined;
-  return { status: 421, sentence: `This server answers for ${[...hosts].join(' and ')}, not for the host that was asked.` };
+  if (!METHODS.has(asked.method ?? '')) return { code: 'method-not-allowed', status: 405, sentence: `The method ${asked.method} is not answered here.`, allow: [...METHODS].join(', ') };
+  if (HEALTH.has(asked.url ?? '')) return undefined;
+  if (!hosts.has(asked.host?.toLowerCase() ?? '')) return { code: 'misdirected', status: 421, sentence: `This server answers for ${[...hosts].join(' and ')}, not for the host that was asked.` };
+  return beyondInterface(asked.method ?? '', asked.url ?? '');
+}
+
+/** Under /api every refusal is a problem document, also for what is not there at all. */
+function beyondInterface(method: string, url: string): Refusal | undefined {
+  const known = methodsAt(url.split('?')[0] ?? '');
+  if (known === 'not-ours' || method === 'OPTIONS') return undefined;
+  if (known.length === 0) return { code: 'not-found', status: 404, sentence: 'There is nothing at this address, or nothing you may see.' };
+  return known.includes(method) ? undefined : { code: 'method-not-allowed', status: 405, sentence: `The method ${method} is not answered at this address; ${known.join(', ')} ${known.length === 1 ? 'is' : 'are'}.`, allow: known.join(', ') };
 }
 
 export const hostsOf = (env: { readonly APP_URL: string; readonly DEMO: boolean }): ReadonlySet<string> =>
@@ -33,14 +48,15 @@ export function installFrontGate(hosts: ReadonlySet<string>): void {
     const [request, response] = rest as [IncomingMessage, ServerResponse];
     const refusal = refusalOf({ method: request.method, url: request.url, host: request.headers.host }, hosts);
     if (!refusal) return emit.call(this, event, ...rest);
-    refuse(response, refusal);
+    refuse(response, refusal, request.url?.startsWith('/api/') === true);
     return true;
   };
 }
 
-function refuse(response: ServerResponse, { status, sentence }: Refusal): void {
+function refuse(response: ServerResponse, { code, status, sentence, allow }: Refusal, asProblem: boolean): void {
   response.writeHead(status, {
-    'content-type': 'text/plain; charset=utf-8',
+    'content-type': asProblem ? 'application/problem+json' : 'text/plain; charset=utf-8',
+    ...(allow && { allow }),
     'content-security-policy': "default-src 'none'; frame-ancestors 'none'",
     'x-content-type-options': 'nosniff',
     'referrer-policy': 'same-origin',
@@ -48,5 +64,5 @@ function refuse(response: ServerResponse, { status, sentence }: Refusal): void {
     'cache-control': 'no-store',
     connection: 'close',
   });
-  response.end(`${sentence}\n`);
+  response.end(asProblem ? JSON.stringify(problemBody({ code, sentence })) : `${sentence}\n`);
 }

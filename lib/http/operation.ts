@@ -16,8 +16,8 @@ export interface Operation<P = Record<string, never>, Q = Record<string, never>,
   readonly summary?: string;
   readonly params?: Taking<P>;
   readonly query?: Taking<Q>;
-  /** A strict object; `stream` leaves the body to the handler. */
-  readonly body?: Taking<B> | 'stream';
+  /** A strict object; `stream` leaves a multipart body to the handler, `bytes` a plain one. */
+  readonly body?: Taking<B> | 'stream' | 'bytes';
   readonly rate?: Rate;
   /** Of success; 200 unless said. */
   readonly status?: number;

@@ -30,6 +30,11 @@ const CREDENTIAL_SENTENCES: Readonly<Record<CredentialFault, string>> = {
 export const badCredential = ({ reason }: BadCredential): DoorError => ({ code: 'bad-credential', sentence: CREDENTIAL_SENTENCES[reason] });
 export const TOKEN_ELSEWHERE: DoorError = { code: 'denied', sentence: 'A token is for the addresses under /api/v1. Sign in to do this on a page of this site.' };
 
+export const VERSION_WANTED: DoorError = {
+  code: 'precondition-required',
+  sentence: 'The edit names no version. Send If-Match with the ETag of the draft, or `version` in the body.',
+};
+
 export function statusOf(code: DoorErrorCode): number {
   switch (code) {
     case 'invalid': return 422;

@@ -1,4 +1,4 @@
-import { and, desc, eq } from 'drizzle-orm';
+import { and, desc, eq, inArray } from 'drizzle-orm';
 import type { Reader } from '@/db/client';
 import { runProgress, runResults, runs, type RunKind } from '@/db/schema/runs';
 import { revisions } from '@/db/schema/submissions';
@@ -42,8 +42,12 @@ export async function findLatestRun(reader: Reader, revisionId: string, kind: Ru
   return row;
 }
 
-export const listRuns = (reader: Reader, submissionId: string) =>
-  selectRuns(reader).where(eq(runs.submissionId, submissionId)).orderBy(desc(runs.requestedAt));
+/** The newest first; what a run found is large and read for those that are shown. */
+export const listRunHeads = (reader: Reader, submissionId: string) =>
+  reader.select({ id: runs.id, kind: runs.kind }).from(runs).where(eq(runs.submissionId, submissionId)).orderBy(desc(runs.requestedAt), desc(runs.id));
+
+export const listRuns = (reader: Reader, ids: readonly string[]) =>
+  selectRuns(reader).where(inArray(runs.id, [...ids])).orderBy(desc(runs.requestedAt), desc(runs.id));
 
 export async function findFigures(reader: Reader, runId: string) {
   const [row] = await reader.select({ figures: runResults.figures }).from(runResults).where(eq(runResults.runId, runId));

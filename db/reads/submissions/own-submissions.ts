@@ -1,4 +1,4 @@
-import { desc, eq, sql } from 'drizzle-orm';
+import { and, desc, eq, inArray, sql } from 'drizzle-orm';
 import type { Reader } from '@/db/client';
 import { submissionPeople, submissions } from '@/db/schema/submissions';
 
@@ -10,7 +10,17 @@ const verdicts = sql<{ claim: string; verdict: string }[] | null>`(
            order by rr.finished_at desc limit 1) latest,
          json_array_elements(latest.result->'claims') with ordinality c)`;
 
-export const listOwnSubmissions = (reader: Reader, userId: string) =>
+/** In the order of making, which never changes under a reader who pages. */
+export const listOwnSubmissionIds = (reader: Reader, userId: string) =>
+  reader
+    .select({ id: submissions.id })
+    .from(submissionPeople)
+    .innerJoin(submissions, eq(submissions.id, submissionPeople.submissionId))
+    .where(eq(submissionPeople.userId, userId))
+    .orderBy(desc(submissions.createdAt), desc(submissions.id));
+
+/** All of them, or those named; the latest change first. */
+export const listOwnSubmissions = (reader: Reader, userId: string, ids?: readonly string[]) =>
   reader
     .select({
       id: submissions.id,
@@ -24,5 +34,5 @@ export const listOwnSubmissions = (reader: Reader, userId: string) =>
     })
     .from(submissionPeople)
     .innerJoin(submissions, eq(submissions.id, submissionPeople.submissionId))
-    .where(eq(submissionPeople.userId, userId))
+    .where(and(eq(submissionPeople.userId, userId), ids && inArray(submissions.id, [...ids])))
     .orderBy(desc(submissions.updatedAt));

@@ -39,6 +39,7 @@ async function arrive(key: string, stream: Readable, size: number) {
   } catch (error) {
     stream.resume();
     if (error instanceof SizeDiffers) return fail('invalid', `${error.saw} bytes of this part arrived; expected ${error.declared}. Send the part again.`);
+    if (error instanceof Error && /aborted|terminated|premature close|ECONNRESET/i.test(error.message)) return fail('invalid', 'The part ended early: the connection broke. Send it again.');
     throw error;
   }
 }

@@ -1,10 +1,12 @@
 import { database } from '@/db/client';
-import { listRegister, type RegisterAsk } from '@/db/reads/records/register';
+import { isInRegister, listRegister, listRegisterChoices, type RegisterAsk } from '@/db/reads/records/register';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { mayGenerally } from '@/lib/policy/grant';
-import type { Outcome } from '@/lib/services/app-error';
+import { fail, type Outcome } from '@/lib/services/app-error';
+import { cursorOf, idOfCursor, noSuchPlace, type Page, type PageAsk } from '@/lib/services/paging';
 import type { RegisterRow } from './record-view';
+import { parseRegisterQuery, type AddressParams } from './register-query';
 import { viewRows } from './register-rows';
 
 const most = 1000;
@@ -14,4 +16,18 @@ export async function listRecords(actor: Actor, ask: RegisterAsk = {}): Promise<
   const grant = mayGenerally('register.read', actor);
   if (!grant.ok) return grant;
   return ok(await viewRows(database(), await listRegister(database(), ask, 'newest', { limit: most })));
+}
+
+/** The same in pages, for what an address asks; a word that is not understood is refused, not left off. */
+export async function pageRecords(actor: Actor, { limit, cursor }: PageAsk, asked: AddressParams): Promise<Outcome<Page<RegisterRow>>> {
+  const grant = mayGenerally('register.read', actor);
+  if (!grant.ok) return grant;
+  const { query, problems } = parseRegisterQuery(asked, await listRegisterChoices(database()));
+  if (problems.length > 0) return fail('invalid', 'A word of the search is not understood.', problems);
+  const after = cursor === undefined ? undefined : idOfCursor(cursor);
+  if (cursor !== undefined && !(await isInRegister(database(), after ?? ''))) return noSuchPlace(cursor);
+  const rows = await listRegister(database(), query.ask, 'newest', { limit: limit + 1, after });
+  const items = await viewRows(database(), rows.slice(0, limit));
+  const last = items.at(-1);
+  return ok({ items, next: rows.length > limit && last ? cursorOf(last.id) : null });
 }

@@ -11,16 +11,18 @@ import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
 import { beforeLodging, isCurrent } from './before-lodging';
 import { runRevision } from './run-draft';
+import { namesVersion, versionMoved } from './submission-tag';
 import { LODGED_ALREADY } from './update-draft';
 import { viewRevision } from './view-parts';
 
 /** Freezes the revision and asks for its official run, all or nothing. When that is done the submission is in Triage. */
-export function lodgeSubmission(actor: Actor, submissionId: string): Promise<Outcome<{ readonly revision: number; readonly runId: string }>> {
+export function lodgeSubmission(actor: Actor, submissionId: string, ifMatch: readonly string[] | null = null): Promise<Outcome<{ readonly revision: number; readonly runId: string }>> {
   return actOnSubmission({ actor, action: 'submission.lodge', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
     const { currentRevision } = await getSubmissionHead(tx, submissionId);
     const row = await findRevision(tx, submissionId, currentRevision);
     if (!row) return { ok: false, error: NOT_FOUND };
+    if (ifMatch && !namesVersion(ifMatch, row)) return fail('precondition', versionMoved(row));
     const obstacles = await obstaclesOf(tx, row);
     if (obstacles.length > 0) return fail('precondition', `Not lodged. ${obstacles.join(' ')}`, obstacles.map(asProblem));
     const runId = await runRevision(tx, grant, row, 'official');

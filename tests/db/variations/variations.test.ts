@@ -47,7 +47,7 @@ describe('a variation', () => {
     const runId = must(await listVariations(referee, id)).variations[0]?.run.id ?? '';
     for (const other of [author, editor]) {
       expect(must(await listVariations(other, id)).variations).toEqual([]);
-      expect(must(await listRuns(other, id)).map((r) => r.id)).not.toContain(runId);
+      expect(must(await listRuns(other, id)).items.map((r) => r.id)).not.toContain(runId);
       expect(await getFigures(other, id, runId)).toMatchObject({ ok: false, error: { code: 'not-found' } });
     }
   });

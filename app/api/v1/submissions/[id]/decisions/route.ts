@@ -1,22 +1,11 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { decide } from '@/lib/services/decisions/decide';
-import { draftDecision } from '@/lib/services/decisions/draft-decision';
-import { decisionInput } from '@/lib/services/reviews/review-inputs';
+import { decide, draftDecision } from '@/lib/http/contract/reviews';
+import { defineRoute } from '@/lib/http/define-route';
+import { decide as decideOn } from '@/lib/services/decisions/decide';
+import { draftDecision as draft } from '@/lib/services/decisions/draft-decision';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-/** What the decision page starts from. */
-export const GET = defineRoute({
-  door: 'GET /api/v1/submissions/{id}/decisions',
-  params: idParam,
-  handle: ({ actor, params }) => draftDecision(actor, params.id),
-});
+export const GET = defineRoute({ ...draftDecision, handle: ({ actor, params }) => draft(actor, params.id) });
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/decisions',
-  params: idParam,
-  body: decisionInput,
-  status: 201,
-  handle: ({ actor, params, body }) => decide(actor, params.id, body),
-});
+export const POST = defineRoute({ ...decide, handle: ({ actor, params, body }) => decideOn(actor, params.id, body) });

@@ -1,12 +1,8 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
+import { lodgeSubmission } from '@/lib/http/contract/submissions';
+import { defineRoute } from '@/lib/http/define-route';
+import { lodgeSubmission as lodge } from '@/lib/services/submissions/lodge-submission';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/lodge',
-  params: idParam,
-  status: 202,
-  handle: ({ actor, params }) => lodgeSubmission(actor, params.id),
-});
+export const POST = defineRoute({ ...lodgeSubmission, handle: ({ actor, params, ifMatch }) => lodge(actor, params.id, ifMatch) });

@@ -1,14 +1,8 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { noteToEditor } from '@/lib/services/reviews/note-to-editor';
-import { noteInput } from '@/lib/services/reviews/review-inputs';
+import { noteToEditor } from '@/lib/http/contract/reviews';
+import { defineRoute } from '@/lib/http/define-route';
+import { noteToEditor as note } from '@/lib/services/reviews/note-to-editor';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/notes',
-  params: idParam,
-  body: noteInput,
-  status: 201,
-  handle: ({ actor, params, body }) => noteToEditor(actor, params.id, body.body),
-});
+export const POST = defineRoute({ ...noteToEditor, handle: ({ actor, params, body }) => note(actor, params.id, body.body) });

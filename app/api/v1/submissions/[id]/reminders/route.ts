@@ -1,11 +1,8 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { remind } from '@/lib/services/reviews/remind';
+import { remind } from '@/lib/http/contract/reviews';
+import { defineRoute } from '@/lib/http/define-route';
+import { remind as remindAll } from '@/lib/services/reviews/remind';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/reminders',
-  params: idParam,
-  handle: ({ actor, params }) => remind(actor, params.id),
-});
+export const POST = defineRoute({ ...remind, handle: ({ actor, params }) => remindAll(actor, params.id) });

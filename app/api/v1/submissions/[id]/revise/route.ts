@@ -1,12 +1,8 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { reviseSubmission } from '@/lib/services/submissions/revise-submission';
+import { reviseSubmission } from '@/lib/http/contract/submissions';
+import { defineRoute } from '@/lib/http/define-route';
+import { reviseSubmission as revise } from '@/lib/services/submissions/revise-submission';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/revise',
-  params: idParam,
-  status: 201,
-  handle: ({ actor, params }) => reviseSubmission(actor, params.id),
-});
+export const POST = defineRoute({ ...reviseSubmission, handle: ({ actor, params }) => revise(actor, params.id) });

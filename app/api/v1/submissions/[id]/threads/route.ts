@@ -1,24 +1,18 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
+import { listThreads, openThread } from '@/lib/http/contract/reviews';
+import { defineRoute } from '@/lib/http/define-route';
+import { pageOf } from '@/lib/services/paging';
 import { getDesk } from '@/lib/services/reviews/get-desk';
-import { openThread } from '@/lib/services/reviews/open-thread';
-import { threadInput } from '@/lib/services/reviews/review-inputs';
+import { openThread as open } from '@/lib/services/reviews/open-thread';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
 export const GET = defineRoute({
-  door: 'GET /api/v1/submissions/{id}/threads',
-  params: idParam,
-  handle: async ({ actor, params }) => {
+  ...listThreads,
+  handle: async ({ actor, params, query }) => {
     const desk = await getDesk(actor, params.id);
-    return desk.ok ? { ok: true as const, value: { threads: desk.value.threads } } : desk;
+    return desk.ok ? pageOf(desk.value.threads, query, (thread) => thread.id) : desk;
   },
 });
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/threads',
-  params: idParam,
-  body: threadInput,
-  status: 201,
-  handle: ({ actor, params, body }) => openThread(actor, params.id, body),
-});
+export const POST = defineRoute({ ...openThread, handle: ({ actor, params, body }) => open(actor, params.id, body) });

@@ -1,16 +1,11 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { listVariations } from '@/lib/services/variations/list-variations';
-import { requestVariation, variationInput } from '@/lib/services/variations/request-variation';
+import { askVariation, listVariations } from '@/lib/http/contract/submissions';
+import { defineRoute } from '@/lib/http/define-route';
+import { pageVariations } from '@/lib/services/variations/list-variations';
+import { requestVariation } from '@/lib/services/variations/request-variation';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-export const GET = defineRoute({ door: 'GET /api/v1/submissions/{id}/variations', params: idParam, handle: ({ actor, params }) => listVariations(actor, params.id) });
+export const GET = defineRoute({ ...listVariations, handle: ({ actor, params, query }) => pageVariations(actor, params.id, query) });
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/submissions/{id}/variations',
-  params: idParam,
-  body: variationInput,
-  status: 202,
-  handle: ({ actor, params, body }) => requestVariation(actor, params.id, body),
-});
+export const POST = defineRoute({ ...askVariation, handle: ({ actor, params, body }) => requestVariation(actor, params.id, body) });

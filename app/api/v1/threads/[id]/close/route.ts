@@ -1,13 +1,8 @@
-import { defineRoute, idParam } from '@/lib/http/define-route';
-import { closeThread } from '@/lib/services/reviews/close-thread';
-import { closingInput } from '@/lib/services/reviews/review-inputs';
+import { closeThread } from '@/lib/http/contract/reviews';
+import { defineRoute } from '@/lib/http/define-route';
+import { closeThread as close } from '@/lib/services/reviews/close-thread';
 
 export const runtime = 'nodejs';
 export const dynamic = 'force-dynamic';
 
-export const POST = defineRoute({
-  door: 'POST /api/v1/threads/{id}/close',
-  params: idParam,
-  body: closingInput,
-  handle: ({ actor, params, body }) => closeThread(actor, params.id, body.closing),
-});
+export const POST = defineRoute({ ...closeThread, handle: ({ actor, params, body }) => close(actor, params.id, body.closing) });

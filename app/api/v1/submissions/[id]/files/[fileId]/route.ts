@@ -1,5 +1,5 @@
-import { z } from 'zod';
 import { asAttachment } from '@/lib/http/attachment';
+import { readFile } from '@/lib/http/contract/submissions';
 import { defineRoute } from '@/lib/http/define-route';
 import { ok } from '@/lib/kernel/result';
 import { openFile } from '@/lib/services/files/open-file';
@@ -9,8 +9,7 @@ export const dynamic = 'force-dynamic';
 
 /** An uploaded file is only ever given as an attachment, never shown. */
 export const GET = defineRoute({
-  door: 'GET /api/v1/submissions/{id}/files/{fileId}',
-  params: z.strictObject({ id: z.uuid({ version: 'v4' }), fileId: z.uuid({ version: 'v4' }) }),
+  ...readFile,
   handle: async ({ actor, params }) => {
     const file = await openFile(actor, params.id, params.fileId);
     return file.ok ? ok({ ...file.value, stream: await file.value.open() }) : file;

@@ -1,0 +1,24 @@
+import { z } from 'zod';
+import { resultSchema } from '@/lib/claims/result-schema';
+import { problemSchema } from '@/lib/services/problem-schema';
+
+/** What the interface says of runs; the views are in `submission-view.ts` beside this folder. */
+const instant = z.string().describe('ISO 8601, UTC.');
+const result = resultSchema.meta({ id: 'Result', description: 'A `counterfoil-result/1`; its own schema is at /schemas/counterfoil-result/1.' });
+
+const head = { id: z.string(), kind: z.enum(['check', 'official', 'variation']), engine: z.string(), requestedAt: instant };
+
+export const runSchema = z
+  .discriminatedUnion('state', [
+    z.object({ ...head, state: z.enum(['queued', 'running']), fraction: z.number().min(0).max(1), doing: z.string() }),
+    z.object({ ...head, state: z.literal('stopped'), because: z.string() }),
+    z.object({ ...head, state: z.literal('refused'), finishedAt: instant, problems: z.array(problemSchema) }),
+    z.object({ ...head, state: z.literal('measured'), finishedAt: instant, result, resultDigest: z.string().describe('SHA-256 of the canonical result (RFC 8785).'), log: z.array(z.object({ atMs: z.number(), doing: z.string() })) }),
+  ])
+  .meta({ id: 'Run' });
+
+const axis = z.object({ label: z.string(), unit: z.string(), scale: z.enum(['linear', 'log']), values: z.array(z.number()) });
+const series = z.object({ label: z.string(), unit: z.string(), role: z.string(), axis: z.enum(['left', 'right']), scale: z.enum(['linear', 'log']), values: z.array(z.number().nullable()) });
+const figure = z.looseObject({ kind: z.string(), title: z.string(), at: z.record(z.string(), z.number()).optional(), x: axis, series: z.array(series) });
+
+export const figuresSchema = z.object({ runId: z.string(), figures: z.record(z.string(), z.array(figure)) }).meta({ id: 'Figures' });

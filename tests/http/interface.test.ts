@@ -1,0 +1,407 @@
+import { BlobWriter, TextReader, ZipWriter } from '@zip.js/zip.js';
+import { createHash, randomUUID } from 'node:crypto';
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
+import { OPERATIONS } from '@/lib/http/contract/operations';
+import { scopesOfDoor } from '@/lib/http/token-scope';
+import { DOORS } from '@/lib/policy/doors';
+import { REVIEW_DOORS } from '@/lib/policy/review-doors';
+import { TOKEN_SCOPES } from '@/lib/policy/token-scopes';
+import { askDoor, bearer, contractOf, loadHandlers, session, signedIn, tokenFor, type Ask, type DoorName, type Person } from '../support/interface-desk';
+import { burstFiles, burstSheet } from '../support/burst-sheet';
+import { enterAtLevelOne, inDeciding, inTriage, openSigner, REPORT, withReferee, type SignerDesk } from '../support/review-room';
+import { draftWithBursts, must, openServiceDesk, type ServiceDesk } from '../support/service-desk';
+
+vi.mock('next/headers', () => ({ headers: () => Promise.resolve(new Headers()) }));
+
+const UNKNOWN = '7b0f6a52-6c1c-4c55-9a0f-3a3d1f9f8e11';
+const doors = OPERATIONS.map((o) => o.door) as DoorName[];
+const writes = doors.filter((door) => !door.startsWith('GET '));
+let desk: ServiceDesk;
+let signer: SignerDesk;
+let handlers: Awaited<ReturnType<typeof loadHandlers>>;
+let author: Person;
+let editor: Person;
+let referee: Person;
+let stranger: Person;
+let administrator: Person;
+const token: Record<'author' | 'referee' | 'stranger' | 'read' | 'draft' | 'lodge' | 'review', string> = { author: '', referee: '', stranger: '', read: '', draft: '', lodge: '', review: '' };
+let draft = '';
+let reviewed = '';
+let recordId = '';
+
+beforeAll(async () => {
+  desk = await openServiceDesk();
+  signer = await openSigner(desk);
+  handlers = await loadHandlers();
+  [author, editor, referee, stranger, administrator] = [
+    await signedIn('T. Marrable', 'larkfield'), await signedIn('R. Amsel', 'counterfoil', 'editor'), await signedIn('H. Brightwater', 'oxbow'), await signedIn('L. Quennell', 'saltern'), await signedIn('P. Osgood', 'counterfoil', 'administrator'),
+  ];
+  token.author = await tokenFor(author, ...TOKEN_SCOPES);
+  token.referee = await tokenFor(referee, ...TOKEN_SCOPES);
+  token.stranger = await tokenFor(stranger, ...TOKEN_SCOPES);
+  for (const scope of TOKEN_SCOPES) token[scope] = await tokenFor(author, scope);
+  draft = await draftWithBursts(author.actor);
+  reviewed = await inTriage(desk, author.actor);
+  await withReferee(reviewed, editor.actor, referee.actor);
+  const entering = await inDeciding(desk, { author: author.actor, editor: editor.actor, referee: referee.actor });
+  must(await enterAtLevelOne(editor.actor, entering, 'Two bursts in'));
+  const [done] = await signer.run();
+  recordId = done?.outcome === 'signed' ? done.recordId : '';
+}, 180_000);
+afterAll(async () => {
+  await signer?.close();
+  await desk?.close();
+});
+
+const ask = (door: DoorName, what: Ask = {}): Promise<Response> => askDoor(handlers, door, what);
+const asAuthor = (door: DoorName, what: Ask = {}): Promise<Response> => ask(door, { as: bearer(token.author), params: { id: draft }, ...what });
+const read = async <T>(answer: Response | Promise<Response>): Promise<T> => (await (await answer).json()) as T;
+const paramsFor = (door: DoorName, id: string): Record<string, string> => ({ id, ...(door.includes('{fileId}') && { fileId: UNKNOWN }), ...(door.includes('{uploadId}') && { uploadId: UNKNOWN, number: '0' }) });
+const searchFor = (door: DoorName): string => (door.endsWith('/figures') ? `?run=${UNKNOWN}` : '');
+
+/** Everything a write could have left behind. */
+const everything = () =>
+  desk.sql<Record<string, unknown>>(`select (select json_agg(s order by id) from submissions s) s, (select json_agg(r order by id) from revisions r) r, (select count(*) from audit_entries) a, (select count(*) from runs) n,
+    (select count(*) from stored_files) f, (select count(*) from comments) c, (select count(*) from outbox) o, (select count(*) from idempotency_keys) k`);
+
+const VARIATION = { claimId: 'C1', changes: { fLowHz: 20 } };
+const THREAD = { kind: 'question', visibility: 'authors', anchor: { claim: 'C1', at: null }, body: 'Which window?' };
+/** A body that each door would take from the right person at the right time. */
+const BODIES: Readonly<Partial<Record<DoorName, unknown>>> = {
+  'PATCH /api/v1/submissions/{id}': { version: 2, title: 'x' },
+  'DELETE /api/v1/submissions/{id}/files': { name: 'a.txt' },
+  'PUT /api/v1/submissions/{id}/answers': { code: 'x', where: 'x', text: 'x', answer: 'x' },
+  'POST /api/v1/submissions/{id}/uploads': { name: 'long.txt', bytes: 3, sha256: 'a'.repeat(64) },
+  'POST /api/v1/submissions/{id}/withdraw': { reason: 'x' },
+  'POST /api/v1/submissions/{id}/variations': VARIATION,
+  'POST /api/v1/submissions/{id}/threads': THREAD,
+  'POST /api/v1/threads/{id}/comments': { body: 'x' },
+  'POST /api/v1/threads/{id}/close': { closing: 'resolved' },
+  'POST /api/v1/submissions/{id}/reports': REPORT,
+  'POST /api/v1/submissions/{id}/notes': { body: 'x' },
+  'POST /api/v1/invitations/{id}/answer': { accept: false, noConflict: false },
+  'POST /api/v1/submissions/{id}/invitations': { refereeId: UNKNOWN },
+  'POST /api/v1/submissions/{id}/decisions': { kind: 'set-aside', prose: 'x', typed: 'x' },
+};
+const form = (files: Readonly<Record<string, string>>): FormData => {
+  const made = new FormData();
+  for (const [name, text] of Object.entries(files)) made.append(name === 'claim.json' ? 'claim' : 'file', new Blob([text]), name);
+  return made;
+};
+const folder = (title = 'Two bursts in white noise') => form({ 'claim.json': JSON.stringify({ ...burstSheet(), title }), ...burstFiles() });
+const fitting = (door: DoorName): Ask => (contractOf(door).body === 'bytes' ? { raw: 'x' } : contractOf(door).body === 'stream' ? { raw: form({ 'x.txt': '1 2\n' }) } : { json: BODIES[door] ?? {} });
+
+describe('the contract', () => {
+  it('has every door under /api/v1, each served by a route, and no other', () => {
+    const inTable = Object.keys({ ...DOORS, ...REVIEW_DOORS }).filter((door) => door.includes(' /api/v1/')).sort();
+    expect([...doors].sort(), 'add the operation to lib/http/contract').toEqual(inTable);
+    expect([...handlers.keys()].sort()).toEqual(inTable);
+  });
+
+  it('is what each route was made from', () => {
+    for (const [door, handler] of handlers) expect((handler as unknown as { door?: string }).door, door).toBe(door);
+  });
+});
+
+describe('a token without the scope', () => {
+  it('is refused at every door before anything is looked up, and told which scope would do', async () => {
+    const before = await everything();
+    for (const door of doors) {
+      const needed = scopesOfDoor(door);
+      if (needed === null) continue;
+      for (const scope of TOKEN_SCOPES.filter((s) => !needed.includes(s))) {
+        const said = [];
+        for (const id of [draft, reviewed, UNKNOWN]) {
+          const answer = await ask(door, { as: bearer(token[scope]), params: paramsFor(door, id), search: searchFor(door), ...(door.startsWith('GET ') ? {} : fitting(door)) });
+          expect(answer.status, `${door} with ${scope}`).toBe(403);
+          expect(answer.headers.get('www-authenticate')).toBe(`Bearer realm="counterfoil", error="insufficient_scope", scope="${needed.join(' ')}"`);
+          said.push(await answer.text());
+        }
+        expect(new Set(said).size, door).toBe(1);
+      }
+    }
+    expect(await everything()).toEqual(before);
+  });
+});
+
+describe('the wrong person with a good token', () => {
+  it('gets of every submission what anybody gets of an unknown one, byte for byte, and writes nothing', async () => {
+    const before = await everything();
+    for (const door of doors.filter((d) => d.includes('/submissions/{id}') && scopesOfDoor(d)?.length)) {
+      const say = async (id: string) => {
+        const answer = await ask(door, { as: bearer(token.stranger), params: paramsFor(door, id), search: searchFor(door), ...(door.startsWith('GET ') ? {} : fitting(door)) });
+        return [answer.status, [...answer.headers].sort(), await answer.text()];
+      };
+      const unknown = await say(UNKNOWN);
+      expect(unknown[0], door).toBe(404);
+      for (const id of [draft, reviewed]) expect(await say(id), door).toEqual(unknown);
+    }
+    expect(await everything()).toEqual(before);
+  });
+});
+
+describe('somebody who is signed out', () => {
+  it('is answered 401, or 404 where reading would tell, and reads what is public', async () => {
+    for (const door of doors) {
+      const answer = await ask(door, { as: { origin: 'http://127.0.0.1:3210' }, params: paramsFor(door, draft), search: searchFor(door), ...(door.startsWith('GET ') ? {} : fitting(door)) });
+      expect(scopesOfDoor(door) === null ? [200, 404] : door.startsWith('GET ') ? [401, 404] : [401], door).toContain(answer.status);
+    }
+  });
+});
+
+describe('malformed requests', () => {
+  const GARBAGE = ['{', '[1]', '"x"', 'null', '1e400', `{"a":${'['.repeat(5000)}${']'.repeat(5000)}}`, '{"__proto__":{"x":1}}', '\u0000', '{"body":"\\ud800"}'];
+  const IDS = ['x', '1', '%00', '..', '../..', `${UNKNOWN}x`, 'é', 'x'.repeat(3000), "1' or '1'='1"];
+  const QUERIES = ['?limit=0', '?limit=101', '?limit=x', '?limit=1e9', '?cursor=', '?cursor=x', '?cursor=%00', `?cursor=${'x'.repeat(70)}`, '?colour=red', '?limit=1&limit=2'];
+
+  it('are a 4xx problem at every door, with a JSON Pointer to each fault, and never a 500', async () => {
+    const before = await everything();
+    for (const door of writes.filter((d) => contractOf(d).body && typeof contractOf(d).body !== 'string'))
+      for (const raw of GARBAGE) {
+        const answer = await asAuthor(door, { raw, headers: { 'content-type': 'application/json' }, params: paramsFor(door, draft) });
+        expect(answer.status, `${door} ${raw.slice(0, 20)}`).toBeGreaterThanOrEqual(400);
+        const { problems = [] } = await read<{ problems?: { where: string }[] }>(answer);
+        for (const { where } of problems) expect(where, door).toMatch(/^(\/([^~/]|~[01])*)*$/);
+      }
+    for (const door of writes.filter((d) => contractOf(d).body !== 'bytes')) {
+      const answer = await asAuthor(door, { raw: 'x', headers: { 'content-type': 'text/plain' }, params: paramsFor(door, draft) });
+      expect([403, 415], door).toContain(answer.status);
+    }
+    expect(await everything()).toEqual(before);
+  });
+
+  it('an id that cannot exist is answered like one that does not', async () => {
+    for (const door of doors.filter((d) => d.includes('{id}')))
+      for (const id of IDS) {
+        const answer = await asAuthor(door, { params: paramsFor(door, id), search: searchFor(door), ...(door.startsWith('GET ') ? {} : fitting(door)) });
+        expect([403, 404], `${door} ${id.slice(0, 20)}`).toContain(answer.status);
+      }
+  });
+
+  it('a parameter of a list that is not understood is named', async () => {
+    for (const door of doors.filter((d) => d.startsWith('GET ') && contractOf(d).query && !d.endsWith('/figures')))
+      for (const search of QUERIES) {
+        const answer = await ask(door, { as: bearer(token.author), params: { id: reviewed }, search });
+        if (search === '?limit=1&limit=2') continue;
+        expect(answer.status, `${door} ${search.slice(0, 30)}`).toBe(422);
+        expect((await read<{ problems: { where: string }[] }>(answer)).problems[0]?.where).toMatch(/^(\/(limit|cursor)|)$/);
+      }
+  });
+
+  it('an Idempotency-Key of another form is refused and nothing done', async () => {
+    const before = await everything();
+    for (const key of ['short', 'x'.repeat(201), 'with a space in it']) expect((await asAuthor('POST /api/v1/submissions/{id}/check', { headers: { 'idempotency-key': key } })).status).toBe(422);
+    expect(await everything()).toEqual(before);
+  });
+});
+
+describe('an entity tag', () => {
+  it('says 304 to who holds the same bytes, at every door that gives JSON', async () => {
+    for (const door of ['GET /api/v1/submissions', 'GET /api/v1/submissions/{id}', 'GET /api/v1/submissions/{id}/runs', 'GET /api/v1/records', 'GET /api/v1/openapi.json'] as const) {
+      const first = await asAuthor(door);
+      const etag = first.headers.get('etag') ?? '';
+      expect(etag, door).toMatch(/^"[^"]+"$/);
+      const again = await asAuthor(door, { headers: { 'if-none-match': `"other", ${etag}` } });
+      expect([again.status, await again.text()], door).toEqual([304, '']);
+      expect((await asAuthor(door, { headers: { 'if-none-match': '"other"' } })).status).toBe(200);
+    }
+  });
+
+  it('holds an edit to the draft it was made on', async () => {
+    const id = await draftWithBursts(author.actor);
+    const edit = (json: unknown, headers: Record<string, string> = {}) => asAuthor('PATCH /api/v1/submissions/{id}', { params: { id }, json, headers });
+    const etag = (await asAuthor('GET /api/v1/submissions/{id}', { params: { id } })).headers.get('etag') ?? '';
+    expect((await edit({ title: 'No version' })).status).toBe(428);
+    expect((await edit({ title: 'Weak' }, { 'if-match': `W/${etag}` })).status).toBe(412);
+    expect((await edit({ title: 'First' }, { 'if-match': `"other", ${etag}` })).status).toBe(200);
+    const stale = await edit({ title: 'Second' }, { 'if-match': etag });
+    expect([stale.status, (await read<{ detail: string }>(stale)).detail]).toEqual([412, expect.stringMatching(/version 3 now/)]);
+    expect((await edit({ title: 'Any' }, { 'if-match': '*' })).status).toBe(200);
+    expect((await asAuthor('DELETE /api/v1/submissions/{id}/files', { params: { id }, json: { name: 'a.txt' }, headers: { 'if-match': etag } })).status).toBe(412);
+    expect((await asAuthor('POST /api/v1/submissions/{id}/lodge', { params: { id }, headers: { 'if-match': etag } })).status).toBe(412);
+    expect((await read<{ title: string }>(asAuthor('GET /api/v1/submissions/{id}', { params: { id } }))).title).toBe('Any');
+  });
+});
+
+describe('the same key', () => {
+  const keyed = (door: DoorName, key: string, what: Ask): Promise<Response> => asAuthor(door, { ...what, headers: { ...what.headers, 'idempotency-key': key } });
+  const count = async (table: string): Promise<number> => (await desk.sql<{ n: number }>(`select count(*)::int as n from ${table}`))[0]?.n ?? 0;
+
+  it('gives an upload’s first answer again, whatever boundary the sender drew, and a conflict to another upload', async () => {
+    const before = await count('submissions');
+    const first = await keyed('POST /api/v1/submissions', 'folder-once', { raw: folder() });
+    const again = await keyed('POST /api/v1/submissions', 'folder-once', { raw: folder() });
+    expect([first.status, again.status, again.headers.get('idempotency-replayed'), again.headers.get('location')]).toEqual([201, 201, 'true', first.headers.get('location')]);
+    expect(await again.text()).toBe(await first.text());
+    expect((await keyed('POST /api/v1/submissions', 'folder-once', { raw: folder('Another title') })).status).toBe(409);
+    expect(await count('submissions')).toBe(before + 1);
+  });
+
+  it('sent twice at once makes one draft, and keeps no bytes of the other', async () => {
+    const before = [await count('submissions'), await count('stored_files')];
+    const both = await Promise.all([1, 2].map(() => keyed('POST /api/v1/submissions', 'folder-twice-at-once', { raw: folder('At once') })));
+    expect(both.map((r) => r.status)).toEqual([201, 201]);
+    expect(new Set(await Promise.all(both.map((r) => r.text()))).size).toBe(1);
+    expect([await count('submissions'), await count('stored_files')]).toEqual([(before[0] ?? 0) + 1, (before[1] ?? 0) + 3]);
+  });
+
+  it('adds files once, all or none', async () => {
+    const files = { 'one.txt': '1\n', 'two.txt': '2\n' };
+    const first = await keyed('POST /api/v1/submissions/{id}/files', 'files-once', { raw: form(files) });
+    const again = await keyed('POST /api/v1/submissions/{id}/files', 'files-once', { raw: form(files) });
+    expect([first.status, await again.text()]).toEqual([201, await first.text()]);
+    const half = await asAuthor('POST /api/v1/submissions/{id}/files', { raw: form({ 'three.txt': '3\n', '../four.txt': '4\n' }) });
+    expect(half.status).toBe(422);
+    const { revision } = await read<{ revision: { files: { name: string }[] } }>(asAuthor('GET /api/v1/submissions/{id}'));
+    expect(revision.files.map((f) => f.name)).not.toContain('three.txt');
+  });
+
+  it('acts once at each door that takes a body: variation, thread, comment', async () => {
+    const inReview = { params: { id: reviewed } };
+    for (const [door, json, table] of [['POST /api/v1/submissions/{id}/variations', VARIATION, 'variations'], ['POST /api/v1/submissions/{id}/threads', THREAD, 'threads']] as const) {
+      const before = await count(table);
+      const [first, again] = [await keyed(door, `once-${table}`, { ...inReview, json }), await keyed(door, `once-${table}`, { ...inReview, json })];
+      expect([first.status, again.status], door).toEqual([first.status, contractOf(door).status]);
+      expect(await again.text()).toBe(await first.text());
+      expect(await count(table)).toBe(before + 1);
+    }
+    await desk.runAll();
+  });
+
+  it('is another’s own: two people may use the same', async () => {
+    const mine = await keyed('POST /api/v1/submissions', 'a-key-of-two', { raw: folder('Mine') });
+    const theirs = await ask('POST /api/v1/submissions', { as: bearer(token.stranger), raw: folder('Theirs'), headers: { 'idempotency-key': 'a-key-of-two' } });
+    expect(await theirs.text()).not.toBe(await mine.text());
+  });
+
+  it('is free again after a day, and its old answer is gone', async () => {
+    const first = await keyed('POST /api/v1/submissions', 'a-day-long', { raw: folder('Day one') });
+    await desk.sql(`update idempotency_keys set created_at = now() - interval '25 hours' where key = 'a-day-long'`);
+    const second = await keyed('POST /api/v1/submissions', 'a-day-long', { raw: folder('Day two') });
+    expect([second.status, second.headers.get('idempotency-replayed')]).toEqual([201, null]);
+    expect(await second.text()).not.toBe(await first.text());
+    expect(await count(`idempotency_keys where created_at < now() - interval '24 hours'`)).toBe(0);
+  });
+
+  it('keeps no refusal', async () => {
+    expect((await keyed('POST /api/v1/submissions', 'mend-and-retry', { raw: form({ 'a.txt': '1\n' }) })).status).toBe(422);
+    expect((await keyed('POST /api/v1/submissions', 'mend-and-retry', { raw: folder('Mended') })).status).toBe(201);
+  });
+});
+
+describe('lists', () => {
+  interface Listed { readonly items: readonly { readonly id: string }[]; readonly next: string | null }
+  const walk = async (door: DoorName, id: string): Promise<string[]> => {
+    const ids: string[] = [];
+    let search = '?limit=1';
+    for (let pages = 0; pages < 50; pages++) {
+      const answer = await asAuthor(door, { params: { id }, search });
+      const link = answer.headers.get('link');
+      const { items, next } = await read<Listed>(answer);
+      ids.push(...items.map((i) => i.id));
+      expect(link).toBe(next === null ? null : `<${link?.slice(1, link.indexOf('>'))}>; rel="next"`);
+      if (next === null) return ids;
+      search = link?.slice(link.indexOf('?'), link.indexOf('>')) ?? '';
+      expect(new URLSearchParams(search).get('cursor')).toBe(next);
+    }
+    throw new Error('the list has no end');
+  };
+
+  it.each(['GET /api/v1/submissions', 'GET /api/v1/submissions/{id}/runs', 'GET /api/v1/submissions/{id}/variations', 'GET /api/v1/submissions/{id}/threads', 'GET /api/v1/records'] as const)('%s page by page is the whole list, each once', async (door) => {
+    for (const body of ['Why?', 'And why?']) await asAuthor('POST /api/v1/submissions/{id}/threads', { params: { id: reviewed }, json: { ...THREAD, body } });
+    const whole = (await read<Listed>(asAuthor(door, { params: { id: reviewed }, search: '?limit=100' }))).items.map((i) => i.id);
+    expect(whole.length).toBeGreaterThan(0);
+    expect(await walk(door, reviewed)).toEqual(whole);
+  });
+
+  it('a cursor of another list is refused', async () => {
+    const { next } = await read<Listed>(asAuthor('GET /api/v1/submissions', { search: '?limit=1' }));
+    expect((await asAuthor('GET /api/v1/submissions/{id}/runs', { params: { id: reviewed }, search: `?cursor=${next}` })).status).toBe(422);
+  });
+});
+
+describe('an archive', () => {
+  const packed = async (entries: Readonly<Record<string, string>>): Promise<FormData> => {
+    const zip = new ZipWriter(new BlobWriter());
+    for (const [name, text] of Object.entries(entries)) await zip.add(name, new TextReader(text));
+    const made = new FormData();
+    made.append('file', await zip.close(), 'claim.zip');
+    return made;
+  };
+  const sheet = { 'claim.json': JSON.stringify(burstSheet()) };
+
+  it('is taken where a folder is, for a new draft and for its files', async () => {
+    const made = await asAuthor('POST /api/v1/submissions', { raw: await packed({ ...sheet, ...burstFiles() }) });
+    expect(made.status).toBe(201);
+    const { id } = await read<{ id: string }>(made);
+    const added = await asAuthor('POST /api/v1/submissions/{id}/files', { params: { id }, raw: await packed({ 'more/c.txt': '1 2\n', 'd.txt': '3 4\n' }) });
+    expect((await read<{ name: string }[]>(added)).map((f) => f.name)).toEqual(['more/c.txt', 'd.txt']);
+  });
+
+  it.each(['../x.txt', '/etc/x.txt', 'a/../../x.txt', 'C:\\x.txt'])('with the path %s is refused whole', async (name) => {
+    const before = await everything();
+    expect((await asAuthor('POST /api/v1/submissions', { raw: await packed({ ...sheet, [name]: '1\n' }) })).status).toBe(422);
+    expect(await everything()).toEqual(before);
+  });
+});
+
+describe('every other answer fits its schema', () => {
+  it('for the author by token', async () => {
+    expect((await asAuthor('POST /api/v1/submissions/{id}/check')).status).toBe(202);
+    const events = await asAuthor('GET /api/v1/submissions/{id}/events');
+    await events.body?.cancel();
+    await desk.runAll();
+    expect((await asAuthor('GET /api/v1/submissions/{id}/events')).status).toBe(204);
+    for (const door of ['GET /api/v1/submissions', 'GET /api/v1/submissions/{id}', 'GET /api/v1/submissions/{id}/sheet', 'GET /api/v1/submissions/{id}/runs'] as const) expect((await asAuthor(door)).status, door).toBe(200);
+    const { items: [run] } = await read<{ items: { id: string }[] }>(asAuthor('GET /api/v1/submissions/{id}/runs'));
+    expect((await asAuthor('GET /api/v1/submissions/{id}/figures', { search: `?run=${run?.id}` })).status).toBe(200);
+    const { revision } = await read<{ revision: { files: { id: string }[] } }>(asAuthor('GET /api/v1/submissions/{id}'));
+    expect((await asAuthor('GET /api/v1/submissions/{id}/files/{fileId}', { params: { id: draft, fileId: revision.files[0]?.id ?? '' } })).status).toBe(200);
+    const long = Buffer.from('1 2\n3 4\n');
+    const announced = { name: 'long.txt', bytes: long.length, sha256: createHash('sha256').update(long).digest('hex') };
+    const begun = async () => (await read<{ upload: { id: string } }>(asAuthor('POST /api/v1/submissions/{id}/uploads', { json: announced }))).upload.id;
+    expect((await asAuthor('DELETE /api/v1/submissions/{id}/uploads/{uploadId}', { params: { id: draft, uploadId: await begun() } })).status).toBe(200);
+    const upload = { id: draft, uploadId: await begun(), number: '0' };
+    expect((await asAuthor('PUT /api/v1/submissions/{id}/uploads/{uploadId}/parts/{number}', { params: upload, raw: long })).status).toBe(200);
+    expect((await asAuthor('POST /api/v1/submissions/{id}/uploads/{uploadId}', { params: upload })).status).toBe(201);
+    expect((await asAuthor('POST /api/v1/submissions/{id}/uploads', { json: announced })).status).toBe(200);
+    expect((await asAuthor('DELETE /api/v1/submissions/{id}/files', { json: { name: 'long.txt' } })).status).toBe(200);
+    expect((await asAuthor('POST /api/v1/submissions/{id}/lodge')).status).toBe(412);
+    expect((await asAuthor('POST /api/v1/submissions/{id}/withdraw', { json: { reason: 'A better one follows.' } })).status).toBe(200);
+    for (const door of ['GET /api/v1/submissions/{id}', 'GET /api/v1/submissions/{id}/desk', 'GET /api/v1/submissions/{id}/threads', 'GET /api/v1/submissions/{id}/variations'] as const) expect((await asAuthor(door, { params: { id: reviewed } })).status, door).toBe(200);
+  });
+
+  it('for everybody', async () => {
+    const public_ = { as: {}, params: { id: recordId } };
+    expect((await read<{ items: { id: string }[] }>(ask('GET /api/v1/records', { search: '?verdict=agrees' }))).items.map((r) => r.id)).toEqual([recordId]);
+    for (const door of ['GET /api/v1/records/{id}', 'GET /api/v1/records/{id}/badge.svg'] as const) expect((await ask(door, public_)).status, door).toBe(200);
+    expect((await ask('GET /api/v1/openapi.json')).status).toBe(200);
+  });
+
+  it('for referee, editor and administrator', async () => {
+    const id = { params: { id: reviewed } };
+    const asReferee = (door: DoorName, what: Ask = {}) => ask(door, { as: bearer(token.referee), ...id, ...what });
+    const asEditor = (door: DoorName, what: Ask = {}) => ask(door, { as: session(editor.cookie), ...id, ...what });
+    const { threadId } = await read<{ threadId: string }>(asReferee('POST /api/v1/submissions/{id}/threads', { json: { ...THREAD, kind: 'must-change' } }));
+    expect((await ask('POST /api/v1/threads/{id}/comments', { as: bearer(token.author), params: { id: threadId }, json: { body: 'As declared.' } })).status).toBe(201);
+    expect((await asReferee('POST /api/v1/threads/{id}/close', { params: { id: threadId }, json: { closing: 'resolved' } })).status).toBe(200);
+    expect((await asReferee('POST /api/v1/submissions/{id}/notes', { json: { body: 'For the editor.' } })).status).toBe(201);
+    const another = await signedIn('D. Fenn', 'tarn');
+    for (const door of ['GET /api/v1/submissions/{id}/invitations', 'GET /api/v1/submissions/{id}/desk', 'GET /api/v1/queue'] as const) expect((await asEditor(door)).status, door).toBe(200);
+    const invited = await asEditor('POST /api/v1/submissions/{id}/invitations', { json: { refereeId: another.actor.userId } });
+    expect(invited.status).toBe(201);
+    expect([200, 412]).toContain((await asEditor('POST /api/v1/submissions/{id}/reminders')).status);
+    expect((await asReferee('POST /api/v1/submissions/{id}/reports', { json: REPORT })).status).toBe(201);
+    expect((await asEditor('GET /api/v1/submissions/{id}/decisions')).status).toBe(200);
+    expect((await asEditor('POST /api/v1/submissions/{id}/decisions', { json: { kind: 'back-with-author', prose: 'Please widen the band.', typed: 'Two bursts in' } })).status).toBe(201);
+    expect((await ask('POST /api/v1/submissions/{id}/revise', { as: bearer(token.author), ...id })).status).toBe(201);
+    expect((await ask('GET /api/v1/jobs/failed', { as: session(administrator.cookie) })).status).toBe(200);
+    expect((await ask('POST /api/v1/jobs/{id}/retry', { as: session(administrator.cookie), params: { id: randomUUID() } })).status).toBe(404);
+  });
+
+  it('an editor’s token is a member’s', async () => {
+    const as = bearer(await tokenFor(editor, ...TOKEN_SCOPES));
+    expect((await ask('GET /api/v1/queue', { as })).status).toBe(403);
+    expect((await ask('GET /api/v1/submissions/{id}', { as, params: { id: reviewed } })).status).toBe(404);
+  });
+});
