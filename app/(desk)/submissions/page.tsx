@@ -8,6 +8,7 @@ import { formatDay } from '@/app/views/dates';
 import { loadFor } from '@/lib/http/page-guard';
 import { listOwnSubmissions } from '@/lib/services/submissions/list-own-submissions';
 import type { SubmissionLine } from '@/lib/services/submissions/submission-view';
+import { Duplicate } from './duplicate';
 import { NewSubmission } from './new-submission';
 
 export const metadata: Metadata = { title: 'Submissions' };
@@ -22,6 +23,7 @@ function Row({ line }: { readonly line: SubmissionLine }) {
       <td>{line.verdicts.length > 0 ? <VerdictStrip verdicts={line.verdicts.map(({ claim, verdict }) => ({ id: claim, verdict }))} /> : <span className="text-ink-2">not run yet</span>}</td>
       <td>{line.stateWords}</td>
       <td>{formatDay(line.updatedAt)}</td>
+      <td className="text-right"><Duplicate id={line.id} title={line.title} /></td>
     </tr>
   );
 }
@@ -39,7 +41,7 @@ export default async function Submissions() {
         <EmptyState title="Nothing here yet">A submission holds waveforms, noise curves and the numbers you claim of them. The server recomputes each number from your files.</EmptyState>
       ) : (
         <Table caption="Your submissions">
-          <thead><tr><th scope="col">Submission</th><th scope="col">Verdicts</th><th scope="col">State</th><th scope="col">Changed</th></tr></thead>
+          <thead><tr><th scope="col">Submission</th><th scope="col">Verdicts</th><th scope="col">State</th><th scope="col">Changed</th><th scope="col"><span className="sr-only">Next step</span></th></tr></thead>
           <tbody>{lines.map((line) => <Row key={line.id} line={line} />)}</tbody>
         </Table>
       )}

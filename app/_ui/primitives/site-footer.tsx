@@ -1,5 +1,6 @@
 import Link from 'next/link';
 import type { Route } from 'next';
+import { Shortcuts } from './shortcuts';
 
 interface SiteFooterProps {
   readonly engine: string;
@@ -12,6 +13,7 @@ export function SiteFooter({ engine, links }: SiteFooterProps) {
       <div className="wrap flex flex-wrap items-center gap-x-6 gap-y-1 pt-6 pb-10">
         <span>Counterfoil · engine {engine}</span>
         {links.map((link) => <Link key={link.href} href={link.href as Route} className="inline-flex min-h-8 items-center text-ink-2">{link.label}</Link>)}
+        <Shortcuts />
         <span className="stack:ml-auto">The machine reads; only the editor enters.</span>
       </div>
     </footer>

@@ -41,7 +41,7 @@ export function ClaimRow(props: ClaimRowProps) {
   const problem = [errorAt(form, `${at}.id`), errorAt(form, `${at}.tolerance`)].filter(Boolean).join(' ');
   const notes = `claim-${index}-notes`;
   return (
-    <tbody>
+    <tbody data-listed tabIndex={-1} aria-label={id}>
       <tr>
         <th scope="row"><Input dense aria-label={`Id of ${id}`} aria-invalid={errorAt(form, `${at}.id`) ? true : undefined} aria-describedby={notes} {...register(`${at}.id`)} /></th>
         <td>

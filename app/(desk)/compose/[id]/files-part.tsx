@@ -69,7 +69,7 @@ export function FilesPart({ id, files, uploads, usedBy, onGiven, importing }: Fi
 
 function FileRow({ file, preview, usedBy, onRemove }: { readonly file: FileView; readonly preview: Preview | undefined; readonly usedBy: readonly string[]; readonly onRemove: () => void }) {
   return (
-    <li data-listed className="grid min-w-0 gap-2 rounded border border-hair-2 bg-sheet px-4 py-3">
+    <li data-listed tabIndex={-1} className="grid min-w-0 gap-2 rounded border border-hair-2 bg-sheet px-4 py-3">
       <div className="flex flex-wrap items-baseline gap-x-3 gap-y-1">
         <strong className="[overflow-wrap:anywhere]">{file.name}</strong>
         <span className="text-ui text-ink-2">{bytesText(file.bytes)} · {usedBy.length > 0 ? `used as ${usedBy.join(', ')}` : 'not used yet'}</span>

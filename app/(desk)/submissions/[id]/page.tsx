@@ -19,6 +19,7 @@ import { ClaimDiscussion } from '../../review/[id]/claim-discussion';
 import { Letters } from '../../review/[id]/letters';
 import { changeAt, ThreadAnchor } from '../../review/[id]/thread-anchor';
 import { VariationPanel } from '../../review/[id]/variation-panel';
+import { Duplicate } from '../duplicate';
 import { FollowRun } from './follow-run';
 import { Withdraw } from './withdraw';
 
@@ -54,18 +55,19 @@ function slotsFor({ you, draft, lodged, desk, variations }: Loaded): RecordSlots
     change: (claimId, point) => changeAt(desk.changes, claimId, pointsOf(claimId)[point]?.at ?? {}),
     action: (claimId) => (variations && result ? <VariationPanel submissionId={lodged.id} claimId={claimId} curves={curves} unit={result.claims.find((c) => c.id === claimId)?.unit ?? ''} own={variations.variations.filter((v) => v.claimId === claimId)} left={variations.left} points={pointsOf(claimId)} /> : null),
     discussion: (claimId) => <ClaimDiscussion desk={desk} claimId={claimId} points={pointsOf(claimId)} variations={variations?.variations.filter((v) => v.claimId === claimId) ?? []} />,
-    actions: <Actions draft={draft} />,
+    actions: <Actions draft={draft} shown={lodged.revision.number} />,
     aside: <NextStep you={you} draft={draft} desk={desk} />,
   };
 }
 
-function Actions({ draft }: { readonly draft: Loaded['draft'] }) {
+function Actions({ draft, shown }: { readonly draft: Loaded['draft']; /** The revision before one’s eyes. */ readonly shown: number }) {
   const { id, may } = draft;
   return (
     <div className="flex flex-wrap items-start gap-2">
       {may.revise && <ActButton act={revise} input={{ id }} busy="Beginning" tone="main">Revise</ActButton>}
       {draft.revision.lodgedAt === null && <LinkButton href={`/compose/${id}`} tone="main">Go on with revision {draft.revision.number}</LinkButton>}
       <LinkButton href={`/api/v1/submissions/${id}/sheet`} external download>Claim sheet</LinkButton>
+      <Duplicate id={id} title={draft.title} revision={shown} size="normal" />
       {may.withdraw && <Withdraw id={id} />}
     </div>
   );
