@@ -2,7 +2,7 @@ import type uPlot from 'uplot';
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 import type { Palette } from '../tokens';
 import { axisScale, type AxisScale } from './axis-scale';
-import { drawnAsPoints, drawnDashed, type Panel } from './panels';
+import { drawnAsPoints, drawnDashed, panelsOf, type Panel } from './panels';
 
 export interface PlotSpec {
   readonly options: Omit<uPlot.Options, 'width'>;
@@ -35,6 +35,15 @@ function bandsOf(panel: Panel, palette: Palette): uPlot.Band[] {
 
 const splitsOf = (scale: AxisScale): uPlot.Axis['splits'] => (scale.ticks ? (_u, _axis, low, high) => [...(scale.ticks?.(low, high) ?? [])] : undefined);
 
+const NARROW_PX = 64;
+const WIDE_PX = 88;
+
+/** Room for `−0.25 × 10⁻²¹` where any panel needs it: stacked panels keep their edges in line, and no sign is cut off. */
+function labelRoom(figure: Figure): number {
+  const scales = panelsOf(figure).map((panel) => axisScale(panel.scale, panel.series.flatMap((s) => s.values)));
+  return scales.some((scale) => scale.labels([1]).some((label) => label.includes('×'))) ? WIDE_PX : NARROW_PX;
+}
+
 /** Options for one panel. Type is 12 px at any width; colours come from the tokens of the theme in use. */
 export function plotSpec(figure: Figure, panel: Panel, palette: Palette): PlotSpec {
   const grid = { stroke: palette.hair, width: 1 };
@@ -49,7 +58,7 @@ export function plotSpec(figure: Figure, panel: Panel, palette: Palette): PlotSp
     scales: { x: { time: false } },
     axes: [
       { ...axis, scale: 'x', size: panel.showsX ? 28 : 0, splits: splitsOf(x), values: (_, places) => (panel.showsX ? x.labels(places) : places.map(() => '')) },
-      { ...axis, scale: 'y', size: 64, gap: 6, splits: splitsOf(y), values: (_, places) => y.labels(places) },
+      { ...axis, scale: 'y', size: labelRoom(figure), gap: 6, splits: splitsOf(y), values: (_, places) => y.labels(places) },
     ],
     series: [{ label: figure.x.label }, ...panel.series.map((s) => seriesOptions(figure, s, palette))],
     bands: bandsOf(panel, palette),

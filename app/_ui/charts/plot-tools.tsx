@@ -50,7 +50,7 @@ export function PlotTools({ figure, range, onZoom, onReset }: PlotToolsProps) {
   const part = range ? `${brief(range[0])} to ${brief(range[1])} ${unitText(figure.x.unit)}`.trim() : 'whole axis';
   return (
     <div className="-mx-2 flex flex-wrap items-center justify-between gap-x-3">
-      <span role="group" aria-label={`View of “${figure.title}”`} className="flex flex-wrap items-center">
+      <span role="group" aria-label={`View of “${figure.title}”`} className="flex flex-wrap items-center gap-1">
         <Button tone="quiet" size="low" aria-label={`Zoom in on ${figure.title}`} onClick={() => onZoom(0.5)}>Zoom in</Button>
         <Button tone="quiet" size="low" aria-label={`Zoom out of ${figure.title}`} aria-disabled={range === null} onClick={() => { if (range) onZoom(2); }}>Zoom out</Button>
         <Button tone="quiet" size="low" aria-label={`Reset the view of ${figure.title}`} aria-disabled={range === null} onClick={() => { if (range) onReset(); }}>Reset</Button>
