@@ -4,6 +4,7 @@ import { VISITOR, type Actor } from '@/lib/policy/actor';
 import type { AccountRole } from '@/lib/policy/account-role';
 import type { SubmissionFacts } from '@/lib/policy/facts';
 import { beyondScope, may, mayGenerally } from '@/lib/policy/grant';
+import { LACK_SENTENCES } from '@/lib/policy/lack';
 import { SUBMISSION_STATES } from '@/lib/policy/submission-state';
 import { TOKEN_SCOPES, type TokenScope } from '@/lib/policy/token-scopes';
 
@@ -19,6 +20,8 @@ const WHO: Readonly<Record<string, { actor: Actor; part: Partial<SubmissionFacts
   'editor who is author': { actor: member('editor'), part: { authorship: 'author' } },
   'editor who is referee': { actor: member('editor'), part: { referee: 'accepted' } },
   'editor barred': { actor: member('editor'), part: { barred: true } },
+  'editor, one factor': { actor: { ...member('editor'), lacks: 'second-factor' } as Actor, part: {} },
+  'author, no address': { actor: { ...member('member'), lacks: 'confirmed-address' } as Actor, part: { authorship: 'author' } },
   administrator: { actor: member('administrator'), part: {} },
   stranger: { actor: member('member'), part: {} },
   visitor: { actor: VISITOR, part: {} },
@@ -34,12 +37,13 @@ const SIGN = { 'signed-out': 's', 'not-found': '.', denied: 'd', conflict: 'c' }
 const cell = (action: SubmissionAction, who: string, state: SubmissionFacts['state']): string => {
   const { actor, part } = WHO[who] ?? { actor: VISITOR, part: {} };
   const asked = may(action, actor, factsIn(state, part));
-  return asked.ok ? 'Y' : SIGN[asked.error.code];
+  if (asked.ok) return 'Y';
+  return Object.values(LACK_SENTENCES).includes(asked.error.sentence) ? 'l' : SIGN[asked.error.code];
 };
 
 function printMatrix(): string {
   const short = SUBMISSION_STATES.map((s) => s.slice(0, 6).padEnd(7)).join('');
-  const lines = ['Y may   c another state   d another part   . not found   s signed out', ''];
+  const lines = ['Y may   c another state   d another part   . not found   s signed out   l lacks an address or a second factor', ''];
   for (const action of Object.keys(SUBMISSION_ACTIONS) as SubmissionAction[]) {
     lines.push(action.padEnd(24) + short);
     for (const who of Object.keys(WHO)) lines.push(`  ${who}`.padEnd(24) + SUBMISSION_STATES.map((state) => cell(action, who, state).padEnd(7)).join('').trimEnd());
@@ -64,7 +68,17 @@ describe('the matrix of actor, action and state', () => {
   it('shows a draft to its authors alone', () => {
     for (const who of Object.keys(WHO).filter((w) => !w.includes('author')))
       for (const action of Object.keys(SUBMISSION_ACTIONS) as SubmissionAction[])
-        if (who !== 'worker') expect(cell(action, who, 'draft'), `${who} ${action}`).toMatch(/[.s]/);
+        if (who !== 'worker') expect(cell(action, who, 'draft'), `${who} ${action}`).toMatch(/[.sl]/);
+  });
+
+  it('opens to an account that lacks its address or second factor nothing that is shut to a visitor', () => {
+    for (const who of ['editor, one factor', 'author, no address'])
+      for (const action of Object.keys(SUBMISSION_ACTIONS) as SubmissionAction[])
+        for (const state of SUBMISSION_STATES) if (cell(action, 'visitor', state) !== 'Y') expect(cell(action, who, state), `${who} ${action} ${state}`).toBe('l');
+    const held = { ...member('administrator'), lacks: 'second-factor' } as Actor;
+    for (const action of Object.keys(ACCOUNT_ACTIONS) as AccountAction[])
+      expect(mayGenerally(action, held).ok, action).toBe(action.startsWith('account.') || mayGenerally(action, VISITOR).ok);
+    expect(may('review.enter', held, null)).toEqual(may('review.enter', held, factsIn('deciding', {})));
   });
 
   it('lets nobody but the machine do what only a machine does', () => {

@@ -77,13 +77,13 @@ describe('append-only, even where a right was given by mistake', () => {
 
 describe('what a role cannot read', () => {
   it('the worker knows no person, no author and no variation, so it cannot learn who a referee is', async () => {
-    for (const table of ['users', 'sessions', 'accounts', 'verifications', 'submission_people', 'variations', 'audit_entries', 'invitations', 'stored_files'])
+    for (const table of ['users', 'sessions', 'accounts', 'verifications', 'submission_people', 'variations', 'audit_entries', 'invitations', 'stored_files', 'two_factors', 'declined_letters'])
       expect(await attempt('worker', `select * from ${table}`), table).toBe('42501');
     expect(await attempt('worker', 'select owner_id from submissions')).toBe('42501');
   });
 
   it('the signer knows no password, no session and no address', async () => {
-    for (const what of ['* from accounts', '* from sessions', 'email from users', '* from invitations', '* from audit_entries']) expect(await attempt('signer', `select ${what}`), what).toBe('42501');
+    for (const what of ['* from accounts', '* from sessions', 'email from users', '* from invitations', '* from audit_entries', 'password from accounts', '* from two_factors']) expect(await attempt('signer', `select ${what}`), what).toBe('42501');
   });
 
   it('the web cannot write a result, and sees no job', async () => {
