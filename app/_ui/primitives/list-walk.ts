@@ -1,5 +1,5 @@
 /** Rows of every list and table of the page that lead somewhere; a row inside another counts as part of it. */
-const ROWS = 'main [data-listed], main tbody > tr, main [id^="thread-"]';
+const ROWS = 'main [data-listed], main tbody > tr';
 const CONTROLS = 'a[href], button, summary, input, select, textarea';
 const TYPING = 'input:not([type=checkbox], [type=radio], [type=button], [type=submit]), textarea, select, [contenteditable]';
 /** Where arrows and letters have a meaning of their own, or another part of the page is in front. */

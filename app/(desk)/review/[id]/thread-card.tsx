@@ -30,7 +30,7 @@ const seenBy: Record<ThreadView['visibility'], string> = { 'editor-only': 'the e
 export function ThreadCard({ thread, bodies, place, attachable }: ThreadCardProps) {
   const { anchor } = thread;
   return (
-    <article className="rounded border border-hair-2 bg-sheet px-4 py-3" aria-label={`Thread ${thread.number}`}>
+    <article data-listed tabIndex={-1} className="rounded border border-hair-2 bg-sheet px-4 py-3" aria-label={`Thread ${thread.number}`}>
       <header className="flex flex-wrap items-center gap-2">
         <h5 className="font-semibold">{thread.number}. {THREAD_KIND_WORDS[thread.kind]}</h5>
         {place && <Tag>{place}</Tag>}
