@@ -15,7 +15,6 @@ const isRaised = /[⁻⁰¹²³⁴⁵⁶⁷⁸⁹ᐟ]+/g;
 const lower = (digits: string): string => `^{${[...digits].map((digit) => raised[digit] ?? '').join('')}}`;
 
 /** Characters that end a line or steer a terminal have no place in a row. */
-// eslint-disable-next-line no-control-regex
 const oneLine = (text: string): string => text.replace(/[\u0000-\u001f\u007f\u2028\u2029]+/g, ' ');
 
 /** Any text as a cell: LaTeX sees only characters, whatever a title or a file name holds. */
