@@ -83,6 +83,10 @@ describe('the register as a feed', () => {
   });
 });
 
+/** Each change of standing comes after the one before. */
+let months = 0;
+const nextMonth = (): string => `2027-${String((months += 1)).padStart(2, '0')}-01T00:00:00Z`;
+
 const FILES: readonly (readonly [string, Route])[] = [['records.csv', csvRoute], ['feed.atom', feedRoute]];
 
 describe.each(FILES)('%s', (_name, route) => {
@@ -96,14 +100,14 @@ describe.each(FILES)('%s', (_name, route) => {
     expect((await get(route, '?text=two', { 'if-modified-since': first.headers.get('last-modified') ?? '' })).status).toBe(304);
     expect((await get(route, '?text=two', { 'if-none-match': '"other"', 'if-modified-since': first.headers.get('last-modified') ?? '' })).status).toBe(200);
     expect((await get(route, '?text=one', { 'if-none-match': etag })).status).toBe(200);
-    await stand(desk, '9999-zzzz', 'struck', new Date().toISOString(), 'Other files <than> stated.');
+    await stand(desk, '9999-zzzz', 'struck', nextMonth(), 'Other files <than> stated.');
     const after = await get(route, '?text=two', { 'if-none-match': etag });
     expect(after.status).toBe(200);
     const changed = await after.text();
     expect(changed).not.toBe(body);
     expect(changed.toLowerCase()).toContain('struck');
     expect(Date.parse(after.headers.get('last-modified') ?? '')).toBeGreaterThan(Date.parse(first.headers.get('last-modified') ?? ''));
-    await stand(desk, '9999-zzzz', 'entered', new Date(Date.now() + 1000).toISOString());
+    await stand(desk, '9999-zzzz', 'entered', nextMonth());
   });
 
   it.each(['?quantity=mach', '?verdict=failed', '?from=yesterday', '?colour=red', '?quantity=match&quantity=snr', '?noise=G9'])('refuses what it does not understand, and says what: %s', async (search) => {
