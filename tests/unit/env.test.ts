@@ -23,6 +23,11 @@ describe('a process starts only with an environment it can trust', () => {
     expect(signerEnv(complete).SIGNING_KEY_FILE).toBe(complete.SIGNING_KEY_FILE);
   });
 
+  it('does without sign-in with ORCID, or takes all three of its variables', () => {
+    expect(webEnv(complete).ORCID_ISSUER).toBeUndefined();
+    expect(webEnv({ ...complete, ORCID_ISSUER: 'https://orcid.org/', ORCID_CLIENT_ID: 'APP-1', ORCID_CLIENT_SECRET: 'Zk2mXw9LrT4vBn8Y' }).ORCID_ISSUER).toBe('https://orcid.org');
+  });
+
   it('gives no process what belongs to another', () => {
     expect(webEnv(complete)).not.toHaveProperty('SIGNING_KEY_FILE');
     expect(webEnv(complete)).not.toHaveProperty('WORKER_DATABASE_URL');
@@ -38,6 +43,8 @@ describe('a process starts only with an environment it can trust', () => {
     ['a key of the store that everybody knows', { S3_SECRET_ACCESS_KEY: 'changeme' }, 'S3_SECRET_ACCESS_KEY'],
     ['an address that is none', { APP_URL: 'records' }, 'APP_URL'],
     ['plain http outside this machine', { APP_URL: 'http://records.example' }, 'https://'],
+    ['a sign-in with ORCID that is half configured', { ORCID_ISSUER: 'https://orcid.org', ORCID_CLIENT_ID: 'APP-1' }, 'belong together'],
+    ['a provider without TLS outside this machine', { ORCID_ISSUER: 'http://orcid.example', ORCID_CLIENT_ID: 'APP-1', ORCID_CLIENT_SECRET: 'Zk2mXw9LrT4vBn8Y' }, 'https://'],
     ['the demonstration outside this machine', { DEMO: '1' }, 'DEMO=1'],
   ])('refuses %s and names it', (_what, change, named) => {
     expect(() => webEnv({ ...complete, ...change })).toThrow(named);

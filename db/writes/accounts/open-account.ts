@@ -8,12 +8,16 @@ export interface NewAccount {
   readonly role: AccountRole;
   readonly affiliation: string | null;
   readonly passwordHash: string;
+  /** An iD of the local provider, as if it had been linked there; only the demonstration has one. */
+  readonly linkedOrcid?: string | undefined;
+  readonly typedOrcid?: string | undefined;
 }
 
 /** Takes no Grant: only the command line calls it. */
-export async function openAccount(tx: Transaction, { passwordHash, ...person }: NewAccount): Promise<string> {
+export async function openAccount(tx: Transaction, { passwordHash, linkedOrcid, ...person }: NewAccount): Promise<string> {
   const [user] = await tx.insert(users).values({ ...person, email: person.email.toLowerCase(), emailVerified: true }).returning({ id: users.id });
   if (!user) throw new Error('the database gave no row back');
   await tx.insert(accounts).values({ userId: user.id, accountId: user.id, providerId: 'credential', password: passwordHash });
+  if (linkedOrcid) await tx.insert(accounts).values({ userId: user.id, accountId: linkedOrcid, providerId: 'orcid' });
   return user.id;
 }

@@ -34,8 +34,9 @@ export async function openAccounts(dataFolder: string): Promise<DemoActors> {
   return Object.fromEntries(actors) as DemoActors;
 }
 
-async function openAccount({ name, email, affiliation, role }: DemoPerson, password: string): Promise<SignedInActor> {
-  const userId = await createAccount({ name, email, affiliation, role, password });
+async function openAccount({ part: _part, ...person }: DemoPerson, password: string): Promise<SignedInActor> {
+  const { name, role } = person;
+  const userId = await createAccount({ ...person, password });
   return { kind: 'member', userId, name, accountRole: role };
 }
 
