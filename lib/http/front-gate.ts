@@ -1,4 +1,5 @@
 import { Server, type IncomingMessage, type ServerResponse } from 'node:http';
+import type { Duplex } from 'node:stream';
 import { allowedOrigins } from '@/lib/auth/allowed-origins';
 import { methodsAt } from './known-addresses';
 import { problemBody } from './problem-response';
@@ -44,6 +45,7 @@ export const hostsOf = (env: { readonly APP_URL: string; readonly DEMO: boolean 
 export function installFrontGate(hosts: ReadonlySet<string>): void {
   const emit = Server.prototype.emit as (this: Server, event: string | symbol, ...rest: unknown[]) => boolean;
   Server.prototype.emit = function (this: Server, event: string | symbol, ...rest: unknown[]): boolean {
+    if (event === 'clientError') return refuseBroken(rest[0] as NodeJS.ErrnoException, rest[1] as Duplex) || emit.call(this, event, ...rest);
     if (event !== 'request') return emit.call(this, event, ...rest);
     const [request, response] = rest as [IncomingMessage, ServerResponse];
     const refusal = refusalOf({ method: request.method, url: request.url, host: request.headers.host }, hosts);
@@ -53,11 +55,22 @@ export function installFrontGate(hosts: ReadonlySet<string>): void {
   };
 }
 
+/** What Node could not parse has no address: it is answered here, and time-outs and overlong heads by Node. */
+function refuseBroken({ code }: NodeJS.ErrnoException, socket: Duplex): boolean {
+  if (!code?.startsWith('HPE_') || code === 'HPE_HEADER_OVERFLOW' || !socket.writable) return false;
+  const body = JSON.stringify(problemBody({ code: 'malformed', sentence: 'The request is not HTTP as we read it, or its method is none that exists.' }));
+  const head = ['HTTP/1.1 400 Bad Request', 'content-type: application/problem+json', `content-length: ${Buffer.byteLength(body)}`, `content-security-policy: ${NOTHING}`, 'x-content-type-options: nosniff', 'cache-control: no-store', 'connection: close'];
+  socket.end(`${head.join('\r\n')}\r\n\r\n${body}`);
+  return true;
+}
+
+const NOTHING = "default-src 'none'; frame-ancestors 'none'";
+
 function refuse(response: ServerResponse, { code, status, sentence, allow }: Refusal, asProblem: boolean): void {
   response.writeHead(status, {
     'content-type': asProblem ? 'application/problem+json' : 'text/plain; charset=utf-8',
     ...(allow && { allow }),
-    'content-security-policy': "default-src 'none'; frame-ancestors 'none'",
+    'content-security-policy': NOTHING,
     'x-content-type-options': 'nosniff',
     'referrer-policy': 'same-origin',
     'cross-origin-opener-policy': 'same-origin',

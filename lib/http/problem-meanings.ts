@@ -2,6 +2,7 @@ import { problemBody, type DoorErrorCode } from './problem-response';
 
 /** What each kind of refusal means and what to do next: the text of the address in its `type`. */
 const MEANINGS: Readonly<Record<DoorErrorCode, { readonly means: string; readonly next: string }>> = {
+  malformed: { means: 'The request broke off or is not HTTP: a method nobody knows, a header without its colon, a wrong length.', next: 'Send it with an ordinary HTTP library.' },
   invalid: { means: 'The request was read, and something in it is not acceptable.', next: 'Each entry of `problems` says where, what was seen and what was expected. Mend them all and send it again.' },
   'signed-out': { means: 'This needs somebody, and nobody was named.', next: 'Sign in, or send a token in the Authorization header.' },
   'bad-credential': { means: 'A token was sent and opens nothing: it is not known, has expired, or was revoked.', next: 'Make a new one in your account. A request with a token never falls back to the session.' },

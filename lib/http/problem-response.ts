@@ -6,7 +6,7 @@ import type { CredentialFault } from '@/lib/auth/find-token';
 import type { AppError, AppErrorCode } from '@/lib/services/app-error';
 
 /** What a door adds to the ways a verb can end: the request never reached a verb. */
-export type DoorErrorCode = AppErrorCode | 'foreign-origin' | 'bad-credential' | 'too-large' | 'unsupported-media' | 'method-not-allowed' | 'precondition-required' | 'misdirected';
+export type DoorErrorCode = AppErrorCode | 'foreign-origin' | 'bad-credential' | 'too-large' | 'unsupported-media' | 'method-not-allowed' | 'precondition-required' | 'misdirected' | 'malformed';
 
 export interface DoorError {
   readonly code: DoorErrorCode;
@@ -37,6 +37,7 @@ export const VERSION_WANTED: DoorError = {
 
 export function statusOf(code: DoorErrorCode): number {
   switch (code) {
+    case 'malformed': return 400;
     case 'invalid': return 422;
     case 'signed-out': case 'bad-credential': return 401;
     case 'denied': case 'foreign-origin': return 403;
@@ -55,6 +56,7 @@ export function statusOf(code: DoorErrorCode): number {
 }
 
 const TITLES: Readonly<Record<DoorErrorCode, string>> = {
+  malformed: 'Not HTTP as we read it',
   invalid: 'Not acceptable as sent',
   'signed-out': 'Nobody is signed in',
   'bad-credential': 'Token not known',

@@ -74,8 +74,8 @@ describe('a published record is served as the bytes that were signed', () => {
   });
 
   it('the register lists it, and refuses a filter it does not know', async () => {
-    const rows = (await (await get(listRoute, {}, {}, '?verdict=agrees')).json()) as { id: string }[];
-    expect(rows.map((r) => r.id)).toEqual([recordId]);
+    const rows = (await (await get(listRoute, {}, {}, '?verdict=agrees')).json()) as { items: { id: string }[] };
+    expect(rows.items.map((r) => r.id)).toEqual([recordId]);
     expect((await get(listRoute, {}, {}, '?colour=red')).status).toBe(422);
     expect((await get(queueRoute, {})).status).toBe(401);
   });
