@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { derivativesAtSamples, quadratureWeights } from '@/lib/engine/energy/local-calculus';
+import { derivativesAtSamples, quadratureWeights } from '@/lib/engine/radiation/local-calculus';
 import { edgeRule } from '@/lib/engine/series/edge-weights';
 import { interpolatePair } from '@/lib/engine/series/local-interpolation';
 

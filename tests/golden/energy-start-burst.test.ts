@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { bindingEnergy } from '@/lib/engine/energy/energy-before';
+import { bindingEnergy } from '@/lib/engine/radiation/energy-before';
 import { withStartUpBurst } from '@/lib/engine/synthesis/effects';
 import { allModes, synthesise } from '@/lib/engine/synthesis/synthesise';
 import { measureEnergyOf, modeSet } from './energy-signals';

@@ -1,8 +1,9 @@
 import { houseValues } from '../contract/house-values';
 import type { DeclaredSettings } from '../contract/settings';
 import type { Quantity, QuantityInputs } from '../contract/quantity';
-import { binaryOfClaim } from '../energy/energy-settings';
-import { measureEnergy } from '../energy/measure-energy';
+import { energyRecipe } from '../radiation/energy-recipe';
+import { measureRadiated } from '../radiation/measure-radiated';
+import { binaryOfClaim } from '../radiation/radiation-settings';
 
 const needsMassRatio = (inputs: QuantityInputs, declared: DeclaredSettings): boolean =>
   (declared.includeEnergyBeforeStart ?? houseValues.includeEnergyBeforeStart) !== false && inputs.of.a !== undefined && binaryOfClaim(declared, inputs.of.a) === null;
@@ -22,11 +23,11 @@ export const radiatedEnergy: Quantity = {
   unit: '',
   roles: ['a'],
   needsNoise: false,
-  settings: ['modes', 'lMax', 'startM', 'integrationFloor', 'includeEnergyBeforeStart', 'normaliseBy', 'massRatio', 'chi1z', 'chi2z'],
+  settings: energyRecipe.settings,
   required: (inputs, declared) => (needsMassRatio(inputs, declared) ? ['massRatio'] : []),
   sweepable: ['startM', 'lMax', 'integrationFloor'],
   scale: 'absolute',
   naturalTolerance: (value) => 0.01 * Math.abs(value),
   formula: '\\frac{E_{\\mathrm{rad}}}{M}=\\frac{1}{16\\pi}\\int_{t_{\\mathrm{start}}}^{t_{\\mathrm{end}}}\\sum_{\\ell m}\\bigl|\\dot H_{\\ell m}\\bigr|^{2}\\,dt',
-  measure: measureEnergy,
+  measure: (request, watch) => measureRadiated(energyRecipe, request, watch),
 };

@@ -4,8 +4,9 @@ import type { MeasureRequest } from '../contract/quantity';
 import type { DeclaredSettings } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
 import { selectModes } from '../conditioning/select-modes';
-import { energySettings, type EnergySettings } from './energy-settings';
-import { radiationRecord, type RadiationRecord } from './radiation-record';
+import type { RadiationRecipe } from './radiation-recipe';
+import { radiationSettings, type RadiationSettings } from './radiation-settings';
+import { divisionsTo, radiationRecord, type RadiationRecord } from './radiation-record';
 
 export type At = Readonly<Record<string, number>>;
 
@@ -14,21 +15,31 @@ export interface PreparedPoint {
   readonly at: At;
   readonly declared: DeclaredSettings;
   readonly record: RadiationRecord;
-  readonly settings: EnergySettings;
+  readonly settings: RadiationSettings;
+  /** Mass to which the number is referred, in M. */
   readonly norm: number;
+  /** The remnant's mass is not stated: what is radiated goes off `norm`. */
+  readonly lessRadiated: boolean;
 }
 
 export const stop = (code: string, where: string, text: string, fix: string): Finding => ({ code, level: 'stops-lodging', where, text, fix });
 
-function normOf(settings: EnergySettings, waveform: Waveform): number | Finding {
-  const { admEnergy, remnantMass } = waveform.binary;
-  const norm = settings.normaliseBy === 'M' ? 1 : settings.normaliseBy === 'adm' ? admEnergy : remnantMass;
-  if (norm !== undefined && norm > 0) return norm;
-  const field = settings.normaliseBy === 'adm' ? 'admEnergy' : 'remnantMass';
-  return stop('engine/normaliser-missing', waveform.name, `The claim refers the energy to ${settings.normaliseBy}, but ${waveform.name} states no binary.${field}.`, `State binary.${field} beside the waveform, or refer the energy to M.`);
+interface Norm {
+  readonly norm: number;
+  readonly lessRadiated: boolean;
 }
 
-function startFinding(settings: EnergySettings, record: RadiationRecord, name: string): Finding | null {
+function normOf(settings: RadiationSettings, waveform: Waveform, recipe: RadiationRecipe): Norm | Finding {
+  const { admEnergy, remnantMass } = waveform.binary;
+  // Where the remnant is the house choice, M less what was radiated stands for it.
+  if (settings.normaliseBy === 'remnant' && remnantMass === undefined && recipe.normaliseBy === 'remnant') return { norm: 1, lessRadiated: true };
+  const norm = settings.normaliseBy === 'M' ? 1 : settings.normaliseBy === 'adm' ? admEnergy : remnantMass;
+  if (norm !== undefined && norm > 0) return { norm, lessRadiated: false };
+  const field = settings.normaliseBy === 'adm' ? 'admEnergy' : 'remnantMass';
+  return stop('engine/normaliser-missing', waveform.name, `The claim refers the ${recipe.noun} to ${settings.normaliseBy}, but ${waveform.name} states no binary.${field}.`, `State binary.${field} beside the waveform, or refer the ${recipe.noun} to M.`);
+}
+
+function startFinding(settings: RadiationSettings, record: RadiationRecord, name: string): Finding | null {
   const [first, last] = [record.axis[0]!, record.axis[record.axis.length - 1]!];
   // A printed start may be a rounding below the first sample.
   if (settings.startM >= first - 1e-9 * (last - first) && settings.startM < last) return null;
@@ -46,12 +57,12 @@ const noFloor = (name: string): Finding =>
 /**
  * Restricts the completed waveform to a point's modes and fills in its settings.
  * Shape:  gives a function of the swept setting's value.
- * Units:  as EnergySettings.
+ * Units:  as RadiationSettings.
  * Error:  none.
  * Fails:  with the finding that stops the claim.
  * Source: settings.md sections 1, 2 and 5.
  */
-export function preparerOf(completed: Waveform, claim: MeasureRequest): (at: At) => PreparedPoint | Finding {
+export function preparerOf(completed: Waveform, claim: MeasureRequest, recipe: RadiationRecipe): (at: At) => PreparedPoint | Finding {
   const records = new Map<string, RadiationRecord | Finding>();
   const { name } = completed;
   const whole = radiationRecord(completed);
@@ -61,7 +72,7 @@ export function preparerOf(completed: Waveform, claim: MeasureRequest): (at: At)
     if (known) return known;
     const chosen = selectModes(completed, { modes: declared.modes ?? houseValues.modes, lMax: declared.lMax ?? null, withZeroM: true }).waveform;
     const found = radiationRecord(chosen);
-    const made = 'saw' in found ? stop('engine/no-signal', name, `An energy cannot be computed from ${found.saw}.`, found.fix) : found;
+    const made = 'saw' in found ? stop('engine/no-signal', name, `${recipe.article} ${recipe.noun} cannot be computed from ${found.saw}.`, found.fix) : found;
     records.set(key, made);
     return made;
   };
@@ -71,10 +82,10 @@ export function preparerOf(completed: Waveform, claim: MeasureRequest): (at: At)
     if ('code' in record) return record;
     if ('saw' in whole || isSilent(record)) return silence(name);
     // The floor is read from the dominant mode of the file, whatever modes the claim then uses.
-    const settings = energySettings(declared, completed, whole);
-    if (record.variable === 'psi4' && settings.floor === null) return noFloor(name);
-    const norm = normOf(settings, completed);
-    if (typeof norm !== 'number') return norm;
-    return startFinding(settings, record, name) ?? { at, declared, record, settings, norm };
+    const settings = radiationSettings(declared, completed, whole, recipe);
+    if (divisionsTo(record.variable, recipe.withStrain) > 0 && settings.floor === null) return noFloor(name);
+    const norm = normOf(settings, completed, recipe);
+    if ('code' in norm) return norm;
+    return startFinding(settings, record, name) ?? { at, declared, record, settings, ...norm };
   };
 }

@@ -1,14 +1,16 @@
 import { houseValues } from '../contract/house-values';
 import type { UsedSetting } from '../contract/measurement';
+import type { MeasureRequest } from '../contract/quantity';
 import type { DeclaredSettings, ModeIndex, SettingName } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
 import type { BinaryParameters } from '../synthesis/binary';
 import type { BeforeRule } from './energy-before';
 import { defaultFloor } from './integration-floor';
-import type { RadiationRecord } from './radiation-record';
+import { divisionsTo, type RadiationRecord } from './radiation-record';
+import type { RadiationRecipe } from './radiation-recipe';
 
-/** Everything a point of a radiated-energy claim rests on, defaults filled in. */
-export interface EnergySettings {
+/** Everything a point of a claim of this family rests on, defaults filled in. */
+export interface RadiationSettings {
   readonly modes: 'all' | readonly ModeIndex[];
   readonly lMax: number | null;
   readonly startM: number;
@@ -34,15 +36,15 @@ export function binaryOfClaim(declared: DeclaredSettings, waveform: Waveform): B
  * Fails:  never; a floor that cannot be read is null.
  * Source: settings.md section 1.
  */
-export function energySettings(declared: DeclaredSettings, waveform: Waveform, record: RadiationRecord): EnergySettings {
+export function radiationSettings(declared: DeclaredSettings, waveform: Waveform, record: RadiationRecord, recipe: RadiationRecipe): RadiationSettings {
   const startM = declared.startM ?? waveform.junkEndM ?? record.axis[0]!;
   return {
     modes: declared.modes ?? houseValues.modes,
     lMax: declared.lMax ?? null,
     startM,
-    floor: record.variable === 'psi4' ? (declared.integrationFloor ?? defaultFloor(record, startM)) : null,
+    floor: divisionsTo(record.variable, recipe.withStrain) > 0 ? (declared.integrationFloor ?? defaultFloor(record, startM)) : null,
     rule: declared.includeEnergyBeforeStart ?? houseValues.includeEnergyBeforeStart,
-    normaliseBy: declared.normaliseBy ?? houseValues.normaliseBy,
+    normaliseBy: declared.normaliseBy ?? recipe.normaliseBy,
     binary: binaryOfClaim(declared, waveform),
   };
 }
@@ -55,8 +57,9 @@ interface Row {
   readonly matters: boolean;
 }
 
-function rowsOf(used: EnergySettings, waveform: Waveform, record: RadiationRecord): Row[] {
-  const knowsOtherMass = waveform.binary.admEnergy !== undefined || waveform.binary.remnantMass !== undefined;
+function rowsOf(used: RadiationSettings, waveform: Waveform, record: RadiationRecord): Row[] {
+  // Without a stated remnant its mass is what is left of M, which differs from M as well.
+  const knowsOtherMass = used.normaliseBy === 'remnant' || waveform.binary.admEnergy !== undefined || waveform.binary.remnantMass !== undefined;
   const evolves = used.rule === 'removed';
   const rows: Row[] = [
     { name: 'modes', value: used.modes, matters: record.modes.length > 1 },
@@ -83,9 +86,10 @@ function rowsOf(used: EnergySettings, waveform: Waveform, record: RadiationRecor
  * Fails:  never.
  * Source: settings.md section 1 (the mark ●).
  */
-export function settingsUsed(used: EnergySettings, declared: DeclaredSettings, swept: SettingName | null, waveform: Waveform, record: RadiationRecord): { settings: UsedSetting[]; assumed: string[] } {
-  const rows = rowsOf(used, waveform, record);
-  const standing = (name: SettingName): UsedSetting['standing'] => (name === swept ? 'swept' : declared[name] === undefined ? 'assumed' : 'declared');
+export function settingsUsed(used: RadiationSettings, request: MeasureRequest, waveform: Waveform, record: RadiationRecord, allowed: readonly SettingName[]): { settings: UsedSetting[]; assumed: string[] } {
+  const rows = rowsOf(used, waveform, record).filter(({ name }) => allowed.includes(name));
+  const { settings: declared, over } = request;
+  const standing = (name: SettingName): UsedSetting['standing'] => (name === over?.setting ? 'swept' : declared[name] === undefined ? 'assumed' : 'declared');
   const settings = rows.map(({ name, value, unit }): UsedSetting => ({ name, value, standing: standing(name), ...(unit === undefined ? {} : { unit }) }));
   return { settings, assumed: rows.filter(({ name, matters }) => matters && standing(name) === 'assumed').map(({ name }) => name) };
 }

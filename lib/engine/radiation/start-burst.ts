@@ -1,5 +1,5 @@
 import { ENERGY_FACTOR } from './energy-on-samples';
-import type { Fluxes } from './flux-on-samples';
+import { squared, type SampledRadiation } from './news-on-samples';
 
 export interface StartBurst {
   /** Energy above the smooth flux, as a fraction of M. */
@@ -18,9 +18,9 @@ const LONGEST_M = 150;
 const LEAST_SHARE = 1e-3;
 const LEAST_OVER_BASE = 0.25;
 
-function totalPower(fluxes: Fluxes): Float64Array {
-  const total = new Float64Array(fluxes.axis.length);
-  for (const { power } of fluxes.perMode) for (let i = 0; i < total.length; i++) total[i] = total[i]! + power[i]!;
+function totalPower({ axis, news }: SampledRadiation): Float64Array {
+  const total = new Float64Array(axis.length);
+  for (const power of news.map(squared)) for (let i = 0; i < total.length; i++) total[i] = total[i]! + power[i]!;
   return total;
 }
 
@@ -48,11 +48,11 @@ function logLine(axis: Float64Array, flux: Float64Array, from: number, to: numbe
  * Fails:  null for records too short to fit.
  * Source: domain reference V09; the rule is ours.
  */
-export function startBurst(fluxes: Fluxes): StartBurst | null {
-  const { axis } = fluxes;
+export function startBurst(radiation: SampledRadiation): StartBurst | null {
+  const { axis } = radiation;
   const first = axis[0]!;
   const length = Math.min(0.1 * (axis[axis.length - 1]! - first), LONGEST_M);
-  const flux = totalPower(fluxes);
+  const flux = totalPower(radiation);
   const smooth = logLine(axis, flux, first + length, first + 3 * length);
   if (smooth === null) return null;
   let [total, base, excess, moment, second] = [0, 0, 0, 0, 0];

@@ -22,7 +22,14 @@ const LOUD = 1e-2;
 const turnOf = (re: Float64Array, im: Float64Array, i: number): number =>
   Math.abs(Math.atan2(im[i]! * re[i - 1]! - re[i]! * im[i - 1]!, re[i]! * re[i - 1]! + im[i]! * im[i - 1]!));
 
-/** Largest turn of phase between neighbouring samples (rad a step) and in time (rad/M), in loud modes where they are audible. */
+/**
+ * Largest turn of phase between neighbouring samples, in loud modes where they are audible.
+ * Shape:  two numbers for the whole record.
+ * Units:  rad a step, and rad/M.
+ * Error:  turns beyond π a step are read as less.
+ * Fails:  never; zeros where nothing turns.
+ * Source: definition.
+ */
 export function largestTurns(record: RadiationRecord): { readonly aStep: number; readonly inTime: number } {
   const { axis, modes } = record;
   const peaks = modes.map(({ re, im }) => peakModulus(re, im));
@@ -42,7 +49,14 @@ export function largestTurns(record: RadiationRecord): { readonly aStep: number;
   return { aStep, inTime };
 }
 
-/** The fewest samples to a period among modes that matter, and where. */
+/**
+ * The fewest samples to a period among modes that matter, and where.
+ * Shape:  one place, with its mode.
+ * Units:  period, step and time in M; energies as fractions of M.
+ * Error:  that of the phase between neighbouring samples.
+ * Fails:  null where no mode matters.
+ * Source: domain reference V04.
+ */
 export function coarsestSampling(record: RadiationRecord, energies: readonly ModeEnergy[]): CoarsestSampling | null {
   const { axis } = record;
   const total = energies.reduce((sum, { energy }) => sum + energy, 0);

@@ -1,9 +1,9 @@
 /**
- * Energy: what a set of modes carries away. Everything here works in units of the total mass M,
- * on r·h/M or its derivatives, and gives energies as fractions of M. Two routes evaluate the one
- * definition of settings.md rules 2.3, 2.9 and section 5: route A on the samples themselves
- * (differences, sums, one padded transform), route B on splines and Gauss panels (derivative
- * splines, antiderivatives, a closed-form kernel).
+ * Radiation: what a set of modes carries away. Everything here works in units of the total mass M,
+ * on r·h/M or its derivatives. Two routes evaluate the one definition of settings.md rules 2.3, 2.9
+ * and section 5: route A on the samples themselves (differences, sums, one padded transform, sums over
+ * neighbouring modes), route B on splines and Gauss panels (derivative splines, antiderivatives, a
+ * closed-form kernel, a grid on the sphere). A quantity of the family is a `RadiationRecipe`.
  */
 import type { Mode, Waveform } from '../contract/waveform';
 import { MSUN_PER_MPC, MSUN_S } from '../units/constants';
@@ -20,6 +20,9 @@ export interface RadiationRecord {
 }
 
 const derivatives: Readonly<Record<RadiationVariable, number>> = { strain: 0, news: 1, psi4: 2 };
+
+/** How often a series must be integrated to give Ḣ, or H as well. */
+export const divisionsTo = (variable: RadiationVariable, withStrain: boolean): number => Math.max(0, derivatives[variable] - (withStrain ? 0 : 1));
 
 const isRadiation = (variable: Waveform['variable']): variable is RadiationVariable => variable in derivatives;
 
@@ -53,7 +56,7 @@ function scales(waveform: Waveform, order: number): { time: number; amplitude: n
  */
 export function radiationRecord(waveform: Waveform): RadiationRecord | NotRadiation {
   const { content, variable, axis, uniformStep } = waveform;
-  if (content.kind !== 'modes') return { saw: 'strain along one line of sight', fix: 'Supply modes: the energy is a sum over all directions.' };
+  if (content.kind !== 'modes') return { saw: 'strain along one line of sight', fix: 'Supply modes: what is radiated is a sum over all directions.' };
   if (waveform.domain !== 'time') return { saw: 'a waveform in the frequency domain', fix: 'Supply the modes against time.' };
   if (!isRadiation(variable)) return { saw: `the variable ${variable}`, fix: 'Supply strain, news or ψ4.' };
   const scale = scales(waveform, derivatives[variable]);

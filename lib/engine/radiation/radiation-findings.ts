@@ -2,29 +2,29 @@ import type { Finding } from '../contract/finding';
 import type { Waveform } from '../contract/waveform';
 import type { CompletedModes } from '../conditioning/complete-modes';
 import type { ModeEnergy } from './energy-on-samples';
-import type { Fluxes } from './flux-on-samples';
+import type { SampledRadiation } from './news-on-samples';
 import type { RadiationRecord } from './radiation-record';
 import { coarsestSampling } from './sampling';
 import { startBurst } from './start-burst';
 
 const figures = (x: number, digits = 3): string => Number(x.toPrecision(digits)).toString();
 
-/** V14: partners with m < 0 were made up. */
-export function negativeModesFinding(completed: CompletedModes, name: string): Finding[] {
+/** V14: partners with m < 0 were made up; `without` says what the number would be else. */
+export function negativeModesFinding(completed: CompletedModes, name: string, without = ''): Finding[] {
   if (!completed.mirrorAssumed) return [];
   return [
     {
       code: 'engine/negative-m-assumed',
       level: 'needs-answer',
       where: name,
-      text: `Modes with m < 0 are absent from ${name} and the sheet does not say why. We use H(ℓ,−m) = (−1)^ℓ H*(ℓ,m), which holds for a system symmetric about its orbital plane; without them the energy would be half.`,
+      text: `Modes with m < 0 are absent from ${name} and the sheet does not say why. We use H(ℓ,−m) = (−1)^ℓ H*(ℓ,m), which holds for a system symmetric about its orbital plane${without}.`,
       fix: 'Declare negativeM: mirror, given or none.',
     },
   ];
 }
 
-/** V13 where it touches an energy: the quadrupole incomplete, or nothing above ℓ = 2 in the file. */
-export function missingModesFindings(completed: CompletedModes, missing: readonly (readonly [number, number])[], modesDeclared: boolean): Finding[] {
+/** V13 for a sum over modes: the quadrupole incomplete, or nothing above ℓ = 2 in the file. `higher` says what such modes would add. */
+export function missingModesFindings(completed: CompletedModes, missing: readonly (readonly [number, number])[], modesDeclared: boolean, noun: string, higher: string): Finding[] {
   const { waveform, negativeM } = completed;
   const { content, name } = waveform;
   if (content.kind !== 'modes') return [];
@@ -35,16 +35,16 @@ export function missingModesFindings(completed: CompletedModes, missing: readonl
   const quadrupole = [2, -2].filter((m) => !has(2, m) && !(m < 0 && negativeM === 'none'));
   if (quadrupole.length > 0) {
     const names = quadrupole.map((m) => `(2,${m})`).join(' and ');
-    return [...listed, { ...base, text: `${names} is not in ${name}. The (2,±2) modes usually carry more than nine tenths of the energy.`, fix: 'Supply the mode, or list the modes that are meant.' }];
+    return [...listed, { ...base, text: `${names} is not in ${name}. The (2,±2) modes usually carry more than nine tenths of the ${noun}.`, fix: 'Supply the mode, or list the modes that are meant.' }];
   }
   const highest = Math.max(...content.modes.map(({ l }) => l));
   if (highest > 2) return listed;
-  return [...listed, { ...base, text: `${name} holds modes of ℓ = 2 alone. Higher modes add about 1.6 % at equal mass and 7 % at 2:1.`, fix: 'Supply higher modes, or declare lMax: 2 to say that ℓ = 2 is meant.' }];
+  return [...listed, { ...base, text: `${name} holds modes of ℓ = 2 alone. ${higher}`, fix: 'Supply higher modes, or declare lMax: 2 to say that ℓ = 2 is meant.' }];
 }
 
 /** V09: start-up radiation inside the integral. */
-export function burstFindings(fluxes: Fluxes, startM: number, waveform: Waveform, startDeclared: boolean): Finding[] {
-  const burst = startBurst(fluxes);
+export function burstFindings(radiation: SampledRadiation, startM: number, waveform: Waveform, startDeclared: boolean): Finding[] {
+  const burst = startBurst(radiation);
   if (burst === null || startM >= burst.arrivalM + 3 * burst.spreadM) return [];
   const asked = !startDeclared && waveform.junkEndM === null;
   return [
@@ -72,7 +72,7 @@ export function samplingFindings(record: RadiationRecord, energies: readonly Mod
       code: 'engine/sampling',
       level: stops ? 'stops-lodging' : 'worth-a-look',
       where: name,
-      text: stops ? `${what} At least ${TOO_FEW} are needed.` : `${what} We use differences of twelfth order; second-order ones would lose about 1 % of the energy.`,
+      text: stops ? `${what} At least ${TOO_FEW} are needed.` : `${what} We use differences of twelfth order; second-order ones would lose about 1 % of an energy.`,
       fix: 'Supply the record with a smaller step.',
     },
   ];

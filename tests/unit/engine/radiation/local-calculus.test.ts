@@ -1,9 +1,9 @@
 import { describe, expect, it } from 'vitest';
-import { derivativesAtSamples, quadratureWeights } from '@/lib/engine/energy/local-calculus';
-import { bindingEnergy, energyBefore } from '@/lib/engine/energy/energy-before';
-import { startFrequency } from '@/lib/engine/energy/start-frequency';
-import { defaultFloor, floorOfMode } from '@/lib/engine/energy/integration-floor';
-import type { RadiationRecord } from '@/lib/engine/energy/radiation-record';
+import { derivativesAtSamples, quadratureWeights } from '@/lib/engine/radiation/local-calculus';
+import { bindingEnergy, energyBefore } from '@/lib/engine/radiation/energy-before';
+import { startFrequency } from '@/lib/engine/radiation/start-frequency';
+import { defaultFloor, floorOfMode } from '@/lib/engine/radiation/integration-floor';
+import type { RadiationRecord } from '@/lib/engine/radiation/radiation-record';
 
 const uneven = Float64Array.from({ length: 60 }, (_, i) => i / 10 + 0.02 * Math.sin(i));
 
