@@ -164,7 +164,6 @@ describe('the plots of an opened claim', () => {
     await strain().focus();
     await page.keyboard.press('Home');
     await page.keyboard.press('+');
-    await page.keyboard.press('+');
     await expect.poll(zoomInAddress).toMatch(/^C1\.time\.s:/);
     const [low = NaN, high = NaN] = zoomInAddress().split(':')[1]?.split(',').map(Number) ?? [];
     expect(high).toBeGreaterThan(low);
