@@ -64,17 +64,27 @@ function withoutCommonFolder(entries: readonly FileEntry[]): readonly FileEntry[
 async function takeEntry(entry: FileEntry, take: (entry: Incoming) => Promise<void>): Promise<void> {
   const out = new PassThrough();
   const capped = upTo(entry.uncompressedSize);
+  let fault: unknown;
   const inflating = entry.getData(Writable.toWeb(capped)).catch((cause: unknown) => {
+    fault = cause;
     capped.destroy(cause instanceof Error ? cause : new Error(String(cause)));
   });
   const piping = pipeline(capped, out).catch(() => undefined);
   try {
     await take({ name: entry.filename, stream: out });
+  } catch (cause) {
+    out.resume();
+    await inflating;
+    // The very error of the archive, and not one that the taker had of its own.
+    throw cause === fault && !(cause instanceof AppFailure) ? damaged(entry.filename) : cause;
   } finally {
     out.resume();
     await Promise.all([inflating, piping]);
   }
 }
+
+const damaged = (name: string): AppFailure =>
+  new AppFailure({ code: 'invalid', sentence: `${name} in the archive is damaged, or is not as long as the archive says. Pack it again.` });
 
 function upTo(limit: number): Transform {
   let bytes = 0;
