@@ -1,6 +1,8 @@
 import { randomUUID } from 'node:crypto';
 import type { ServiceDesk } from './service-desk';
 
+type Owner = Pick<ServiceDesk, 'sql'>;
+
 /** A record with whatever words and numbers a test needs. The rows are the owner's; the register's own are made by its trigger. */
 export interface PlantedRecord {
   readonly id: string;
@@ -21,7 +23,7 @@ export interface PlantedClaim {
 const KEY = '0123456789abcdef';
 const point = { at: {}, claimed: 0.98, printed: '0.98', value: 0.9801, expandedUncertainty: 1e-6, tolerance: 0.005, apart: 0.0001, verdict: 'agrees', routes: { A: 0.9801, B: 0.9801 } };
 
-export async function plantRecord(desk: ServiceDesk, ownerId: string, planted: PlantedRecord): Promise<string> {
+export async function plantRecord(desk: Owner, ownerId: string, planted: PlantedRecord): Promise<string> {
   const { id, title, authors = ['T. Marrable'], statement = '', enteredAt = '2026-11-14T09:00:00Z', claims = [{ quantity: 'match' }] } = planted;
   const named = claims.map((claim, i) => ({ verdict: 'agrees', noise: 'G2', points: [point], ...claim, id: `C${i + 1}` }));
   const sheet = {
@@ -44,5 +46,5 @@ export async function plantRecord(desk: ServiceDesk, ownerId: string, planted: P
   return id;
 }
 
-export const stand = (desk: ServiceDesk, id: string, standing: string, since: string, reason = '') =>
+export const stand = (desk: Owner, id: string, standing: string, since: string, reason = '') =>
   desk.sql(`insert into record_standings (record_id, standing, reason, since) values ($1, $2, $3, $4)`, id, standing, reason, since);
