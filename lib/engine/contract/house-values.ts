@@ -24,3 +24,9 @@ export const houseValues = {
   rateLaw: 'euclidean',
   templateMassRange: [0.5, 2],
 } as const satisfies DeclaredSettings;
+
+/** From the peak, in M: where a ringdown is fitted unless `window` says otherwise. `window` has another default for each quantity. */
+export const ringdownWindow = [25, 60] as const;
+
+/** The mass to which a recoil is referred unless `normaliseBy` says otherwise. */
+export const houseRecoilMass = 'remnant';

@@ -50,7 +50,7 @@ describe('the sentence to print', () => {
     expect(printedSentence(horizon)).toContain('claimed: 3996 Mpc with tolerance 5.0 %');
     expect(printedSentence(horizon)).toContain('threshold 8 (assumed); flat cosmology with H₀ = 67.4 km/s/Mpc and Ωₘ = 0.315 (assumed); averaged over the sky; 3 equal detectors in one place; arm angle 60 °');
     const energy = printable({ heading: { ...heading, title: 'Radiated energy of A', noiseSource: null, waveforms: [{ name: 'A', files: ['a.txt'] }] }, claim: { ...claim, quantity: 'radiated-energy', settings: [used('modes', 'all', 'assumed'), used('startM', 150, 'declared', 'M'), used('includeEnergyBeforeStart', 'removed'), used('normaliseBy', 'M')] } });
-    expect(printedSentence(energy)).toContain('; A from a.txt (SHA-256 0123456789ab); all modes of the files (assumed); integrated from t = 150 M; energy between the first sample and the start added; as a fraction of the total mass M; ');
+    expect(printedSentence(energy)).toContain('; A from a.txt (SHA-256 0123456789ab); all modes of the files (assumed); integrated from t = 150 M; energy between the first sample and the start added; referred to the total mass M; ');
     expect(printedSentence(energy)).not.toMatch(/noise|band/);
   });
   it('says unknown for what is unknown, and never that a number was obtained which was not', () => {
@@ -88,7 +88,7 @@ const sample: Readonly<Record<SettingRow['shape']['kind'], (row: SettingRow) => 
   cosmology: () => fc.record({ h0: fc.integer({ min: 20, max: 150 }), omegaM: fc.constant(0.3) }),
 };
 /** What a reader would look for, where the words are not simply label and value. */
-const inWords: Readonly<Record<string, RegExp>> = { maximise: /maximised over|not maximised/, modes: /all modes|modes \(/, lMax: /ℓ ≤/, average: /average/, detectors: /detector/, response: /response/, taper: /taper/, cosmology: /cosmology with H₀/, rateLaw: /rate law/, parameters: /parameter/, includeEnergyBeforeStart: /energy (before|since|between)/, normaliseBy: /as a fraction of/, startM: /integrated from/, templateMassRange: /template mass from/, fLowHz: /band from/, fHighHz: /band from .* to /, massFrame: /in the (detector|source) frame/ };
+const inWords: Readonly<Record<string, RegExp>> = { maximise: /maximised over|not maximised/, modes: /all modes|modes \(/, lMax: /ℓ ≤/, average: /average/, detectors: /detector/, response: /response/, taper: /taper/, cosmology: /cosmology with H₀/, rateLaw: /rate law/, parameters: /parameter/, includeEnergyBeforeStart: /energy (before|since|between)/, normaliseBy: /referred to/, startM: /integrated from/, templateMassRange: /template mass from/, fLowHz: /band from/, fHighHz: /band from .* to /, massFrame: /in the (detector|source) frame/ };
 const numbersIn = (value: unknown): readonly number[] => (typeof value === 'number' ? [value] : typeof value === 'object' && value !== null ? Object.values(value).flatMap(numbersIn) : []);
 
 describe('every setting that a quantity takes', () => {

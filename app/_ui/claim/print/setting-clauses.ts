@@ -36,7 +36,7 @@ const modesText = (value: unknown, inDetector: boolean): string =>
 
 const averages: Readonly<Record<string, string>> = { optimal: 'no average over directions', sky: 'averaged over the sky', 'sky-orientation': 'averaged over sky and orientation', volume: 'averaged over volume' };
 const before: Readonly<Record<string, string>> = { false: 'energy before the start left out', true: 'energy since infinite separation added', removed: 'energy between the first sample and the start added' };
-const references: Readonly<Record<string, string>> = { M: 'as a fraction of the total mass M', adm: 'as a fraction of the ADM energy', remnant: 'as a fraction of the remnant mass' };
+const references: Readonly<Record<string, string>> = { M: 'referred to the total mass M', adm: 'referred to the ADM energy', remnant: 'referred to the remnant mass' };
 
 function responseText(value: unknown): string {
   const factors = loose(value);
