@@ -40,8 +40,6 @@ interface RouteSpec<P, Q, B, T> extends Operation<P, Q, B> {
 
 type Handler = (request: Request, context: { params: Promise<Record<string, string | string[] | undefined>> }) => Promise<Response>;
 
-export const idParam = z.strictObject({ id: z.uuid({ version: 'v4' }) });
-
 /** The only way to make a route handler: origin, actor, scope, rate, shape, verb, answer. */
 export function defineRoute<P = Record<string, never>, Q = Record<string, never>, B = undefined, T = unknown>(spec: RouteSpec<P, Q, B, T>): Handler {
   const method = spec.door.slice(0, spec.door.indexOf(' '));

@@ -2,9 +2,6 @@ import type { z } from 'zod';
 import type { Door } from '@/lib/policy/doors';
 import type { Rate } from './rate';
 
-/** Reads `z.ZodType<T>` off a field, or nothing when the door takes none. */
-type Taking<T> = z.ZodType<T>;
-
 /**
  * What one door of the interface takes and gives, without what it does. Route and OpenAPI document are
  * both made from it, so that neither can say something else than the other.
@@ -14,10 +11,10 @@ export interface Operation<P = Record<string, never>, Q = Record<string, never>,
   readonly door: Door;
   /** One sentence for readers: what it does, or what it gives. */
   readonly summary?: string;
-  readonly params?: Taking<P>;
-  readonly query?: Taking<Q>;
+  readonly params?: z.ZodType<P>;
+  readonly query?: z.ZodType<Q>;
   /** A strict object; `stream` leaves a multipart body to the handler, `bytes` a plain one. */
-  readonly body?: Taking<B> | 'stream' | 'bytes';
+  readonly body?: z.ZodType<B> | 'stream' | 'bytes';
   readonly rate?: Rate;
   /** Of success; 200 unless said. */
   readonly status?: number;
