@@ -31,7 +31,7 @@ afterAll(async () => {
 });
 
 function run(script: string): Promise<{ readonly code: number | null; readonly out: string }> {
-  const bash = spawn('bash', ['-c', script], { cwd: folder, env: { PATH: process.env['PATH'] ?? '', COUNTERFOIL_URL: app.url, COUNTERFOIL_TOKEN: token } });
+  const bash = spawn('bash', ['-c', script], { cwd: folder, env: { NODE_ENV: 'test', PATH: process.env['PATH'] ?? '', COUNTERFOIL_URL: app.url, COUNTERFOIL_TOKEN: token } });
   let out = '';
   for (const stream of [bash.stdout, bash.stderr]) stream.on('data', (chunk: Buffer) => (out += chunk.toString()));
   return new Promise((resolve) => bash.once('close', (code) => resolve({ code, out })));
