@@ -37,8 +37,8 @@ export const VERSION_WANTED: DoorError = {
 
 export function statusOf(code: DoorErrorCode): number {
   switch (code) {
-    case 'malformed': return 400;
     case 'invalid': return 422;
+    case 'malformed': return 400;
     case 'signed-out': case 'bad-credential': return 401;
     case 'denied': case 'foreign-origin': return 403;
     case 'not-found': return 404;

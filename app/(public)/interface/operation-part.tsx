@@ -4,7 +4,7 @@ import type { FieldLine, OperationLine } from './describe-operation';
 export function OperationPart({ operation }: { readonly operation: OperationLine }) {
   const { id, door, summary, scope, status, query, body, upload, answer, answerWord } = operation;
   return (
-    <article aria-labelledby={id} className="grid gap-3 py-5 shadow-[inset_0_1px_var(--hair-2)]">
+    <article aria-labelledby={id} className="grid grid-cols-[minmax(0,1fr)] gap-3 py-5 shadow-[inset_0_1px_var(--hair-2)]">
       <h3 id={id} className="scroll-mt-4 font-code text-code font-semibold [overflow-wrap:anywhere]">{door}</h3>
       <p className="max-w-measure text-ui">{summary} <span className="text-ink-2">Scope: {scope}.</span></p>
       {query.length > 0 && <Fields caption={`Parameters of ${door}`} title="Parameters" fields={query} />}

@@ -13,7 +13,7 @@ export default async function Tokens() {
   const tokens = await loadFor('/account/tokens', listTokens);
   return (
     <div className="wrap pt-10">
-      <div className="mx-auto grid max-w-[980px] gap-8">
+      <div className="mx-auto grid max-w-[980px] grid-cols-[minmax(0,1fr)] gap-8">
         <div>
           <p className="mb-2 flex items-center gap-2.5 text-ui text-ink-2"><Link href="/account" className="inline-flex min-h-8 items-center">Account</Link><span aria-hidden>/</span><span>tokens</span></p>
           <h1>Tokens</h1>
