@@ -31,7 +31,8 @@ afterAll(async () => {
 });
 
 function run(script: string): Promise<{ readonly code: number | null; readonly out: string }> {
-  const bash = spawn('bash', ['-c', script], { cwd: folder, env: { NODE_ENV: 'test', PATH: process.env['PATH'] ?? '', COUNTERFOIL_URL: app.url, COUNTERFOIL_TOKEN: token } });
+  // A socket as standard input makes bash take itself for a remote shell and read its start-up file.
+  const bash = spawn('bash', ['--norc', '--noprofile', '-c', script], { stdio: ['ignore', 'pipe', 'pipe'], cwd: folder, env: { NODE_ENV: 'test', PATH: process.env['PATH'] ?? '', COUNTERFOIL_URL: app.url, COUNTERFOIL_TOKEN: token } });
   let out = '';
   for (const stream of [bash.stdout, bash.stderr]) stream.on('data', (chunk: Buffer) => (out += chunk.toString()));
   return new Promise((resolve) => bash.once('close', (code) => resolve({ code, out })));
