@@ -6,6 +6,7 @@ import { Segmented } from '@/app/_ui/primitives/segmented';
 import { say } from '@/app/_ui/primitives/toaster';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { emptyNoise } from './fields';
+import { FileOptions } from './file-options';
 import { errorAt } from './form-error';
 import type { ComposerForm } from './waveform-part';
 
@@ -33,7 +34,7 @@ export function NoisePart({ form, files }: { readonly form: ComposerForm; readon
 function NoiseRow({ form, index, files, onRemove }: { readonly form: ComposerForm; readonly index: number; readonly files: readonly string[]; readonly onRemove: () => void }) {
   const { register, watch, setValue } = form;
   const at = `noise.${index}` as const;
-  const { kind, curve, name } = watch(at);
+  const { kind, curve, name, file } = watch(at);
   const built = builtInCurves.find((c) => c.id === curve);
   return (
     <fieldset className="grid gap-3 rounded border border-hair-2 bg-sheet px-4 py-3">
@@ -43,7 +44,7 @@ function NoiseRow({ form, index, files, onRemove }: { readonly form: ComposerFor
         <TextField label="Name" error={errorAt(form, `${at}.name`)} {...register(`${at}.name`)} />
         {kind === 'file' ? (
           <>
-            <SelectField label="File" {...register(`${at}.file`)}><option value="">choose a file</option>{files.map((f) => <option key={f}>{f}</option>)}</SelectField>
+            <SelectField label="File" {...register(`${at}.file`)}><FileOptions files={files} chosen={file} /></SelectField>
             <TextField label="Columns, in order" list="noise-layouts" spellCheck={false} hint="asd in Hz^−½, psd in Hz⁻¹, or characteristic" {...register(`${at}.columns`)} />
             <SelectField label="Sided" {...register(`${at}.sided`)}><option value="">assumed: one</option><option>one</option><option>two</option></SelectField>
           </>

@@ -7,6 +7,7 @@ import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
 import { say } from '@/app/_ui/primitives/toaster';
 import { emptyWaveform, type ComposerFields } from './fields';
+import { FileOptions } from './file-options';
 import { errorAt } from './form-error';
 
 export type ComposerForm = UseFormReturn<ComposerFields>;
@@ -57,7 +58,7 @@ const nextName = (taken: readonly string[]): string => [...'ABCDEFGHJKLMNOPQRTUV
 function WaveformRow({ form, index, files, onRemove }: { readonly form: ComposerForm; readonly index: number; readonly files: readonly string[]; readonly onRemove: () => void }) {
   const { register, watch } = form;
   const at = `waveforms.${index}` as const;
-  const { name, rest } = watch(at);
+  const { name, rest, file } = watch(at);
   const several = typeof rest.files === 'object' && rest.files !== null ? Object.entries(rest.files as Record<string, string>) : [];
   return (
     <fieldset className="grid gap-3 rounded border border-hair-2 bg-sheet px-4 py-3">
@@ -67,7 +68,7 @@ function WaveformRow({ form, index, files, onRemove }: { readonly form: Composer
         {several.length > 0 ? (
           <p className="text-ui"><span className="block text-small font-semibold">Files, one a mode</span>{several.map(([mode, file]) => `(${mode}) ${file}`).join(', ')}</p>
         ) : (
-          <SelectField label="File" {...register(`${at}.file`)}><option value="">choose a file</option>{files.map((f) => <option key={f}>{f}</option>)}</SelectField>
+          <SelectField label="File" {...register(`${at}.file`)}><FileOptions files={files} chosen={file} /></SelectField>
         )}
         <TextField label="Columns, in order" list="layouts" autoComplete="off" spellCheck={false} hint="t or f first; _ skips one" {...register(`${at}.columns`)} />
       </div>
