@@ -19,6 +19,7 @@ const sentences: Readonly<Record<string, string>> = {
   ACCOUNT_TEMPORARILY_LOCKED: 'Ten wrong codes in a row: the second factor of this account rests for 15 minutes. Your password alone opens nothing meanwhile.',
   TOTP_ALREADY_ENABLED: 'This account has a second factor already. Reload the page.',
   CREDENTIAL_ACCOUNT_NOT_FOUND: 'This account has no password yet. Set one by mail.',
+  PROVIDER_NOT_FOUND: 'ORCID cannot be reached just now. Try again in a minute, or sign in with a password.',
   UNAUTHORIZED: 'Nobody is signed in here any more. Sign in and try again.',
   INVALID_EMAIL: 'This is not an e-mail address. It should look like name@place.example.',
 };
