@@ -14,6 +14,8 @@ const folder = z
   })
   .meta({ id: 'Folder' });
 
+const files = z.object({ file: z.array(z.string().meta({ contentEncoding: 'binary' })).describe('Each under its relative path.') }).meta({ id: 'Files' });
+
 const problem = (description: string): ZodOpenApiResponseObject => ({ description, content: { 'application/problem+json': { schema: problemDocumentSchema } } });
 
 const etag = { etag: { schema: { type: 'string' as const }, description: 'Strong. Send it back as If-None-Match, or as If-Match with an edit.' } };
@@ -72,7 +74,7 @@ function describe(operation: Described): ZodOpenApiOperationObject {
 const bodyOf = ({ body, door }: Described): Pick<ZodOpenApiOperationObject, 'requestBody'> => {
   if (body === undefined) return {};
   if (body === 'bytes') return { requestBody: { required: true, content: { 'application/octet-stream': {} } } };
-  if (body === 'stream') return { requestBody: { required: true, content: { 'multipart/form-data': { schema: folder } } } };
+  if (body === 'stream') return { requestBody: { required: true, content: { 'multipart/form-data': { schema: door.endsWith('/files') ? files : folder } } } };
   return { requestBody: { required: !door.startsWith('GET '), content: { 'application/json': { schema: body } } } };
 };
 

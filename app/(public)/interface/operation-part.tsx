@@ -9,7 +9,7 @@ export function OperationPart({ operation }: { readonly operation: OperationLine
       <p className="max-w-measure text-ui">{summary} <span className="text-ink-2">Scope: {scope}.</span></p>
       {query.length > 0 && <Fields caption={`Parameters of ${door}`} title="Parameters" fields={query} />}
       {upload === 'bytes' && <p className="max-w-measure text-ui">Takes <code className="font-code text-code">application/octet-stream</code>: the bytes as they are.</p>}
-      {upload === 'folder' && <p className="max-w-measure text-ui">Takes <code className="font-code text-code">multipart/form-data</code>: <code className="font-code text-code">claim</code> is the claim sheet, each <code className="font-code text-code">file</code> a file under its relative path, or one of them a .zip of all.</p>}
+      {upload === 'folder' && <p className="max-w-measure text-ui">Takes <code className="font-code text-code">multipart/form-data</code>: {door.endsWith('/files') ? '' : <><code className="font-code text-code">claim</code> is the claim sheet, </>}each <code className="font-code text-code">file</code> a file under its relative path{door.endsWith('/files') ? '' : ', or one of them a .zip of all'}.</p>}
       {body.length > 0 && <Fields caption={`Body of ${door}`} title="Body, application/json" fields={body} />}
       {answer.length > 0 ? <Fields caption={`Answer of ${door}`} title={`Answer, ${status}`} fields={answer} /> : <p className="text-ui"><span className="font-semibold">Answer, {status}:</span> {answerWord}</p>}
     </article>

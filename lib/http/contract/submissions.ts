@@ -30,7 +30,7 @@ export const createSubmission = operation({
 export const readSubmission = operation({ door: 'GET /api/v1/submissions/{id}', summary: 'State, sheet, files and verdicts: the draft for its authors, else the latest lodged revision.', params: idParam, answer: submissionSchema });
 export const editSubmission = operation({
   door: 'PATCH /api/v1/submissions/{id}',
-  summary: 'Changes title, statement or parts of the sheet of a draft; names the version it was made on by If-Match or by `version`.',
+  summary: 'Changes title, statement or parts of the sheet of a draft; names the version it was made on, by If-Match or in the body.',
   params: idParam,
   body: draftPatch,
   ifMatch: true,
@@ -60,7 +60,7 @@ export const reviseSubmission = operation({ door: 'POST /api/v1/submissions/{id}
 
 export const listRuns = operation({ door: 'GET /api/v1/submissions/{id}/runs', summary: 'Runs that you may see, with their results, the newest first.', params: idParam, query: page, answer: pageSchema(runSchema) });
 export const readFigures = operation({ door: 'GET /api/v1/submissions/{id}/figures', summary: 'The curves of one run.', params: idParam, query: z.strictObject({ run: z.string().describe('Id of the run.') }), answer: figuresSchema });
-export const watchRuns = operation({ door: 'GET /api/v1/submissions/{id}/events', summary: 'Live progress, as server-sent events `progress` until `end`; 204 when nothing runs.', params: idParam, media: 'text/event-stream' });
+export const watchRuns = operation({ door: 'GET /api/v1/submissions/{id}/events', summary: 'Live progress, as server-sent events named progress, until one named end; 204 when nothing runs.', params: idParam, media: 'text/event-stream' });
 
 export const listVariations = operation({ door: 'GET /api/v1/submissions/{id}/variations', summary: 'Your reruns with other settings, and how many more you may ask for now.', params: idParam, query: page, answer: pageSchema(variationSchema).extend({ left: z.int() }) });
 export const askVariation = operation({ door: 'POST /api/v1/submissions/{id}/variations', summary: 'Asks for a rerun of one lodged claim with other settings; it changes no number of the record.', params: idParam, body: variationInput, status: 202, answer: z.object({ variationId: uuid, runId: uuid }) });

@@ -12,7 +12,7 @@ export function TokenTable({ tokens }: { readonly tokens: readonly TokenView[] }
   return (
     <Table caption="Your tokens, those in force first" className="min-w-[640px]">
       <thead>
-        <tr><th scope="col">Name</th><th scope="col">Begins with</th><th scope="col">Scopes</th><th scope="col">Last use</th><th scope="col">End</th><th scope="col"><span className="sr-only">Act</span></th></tr>
+        <tr><th scope="col">Name</th><th scope="col">Begins with</th><th scope="col">Scopes</th><th scope="col">Last use</th><th scope="col">End</th><th scope="col" className="relative"><span className="sr-only">Act</span></th></tr>
       </thead>
       <tbody>
         {tokens.map((token) => (
