@@ -109,7 +109,7 @@ export function openApiDocument(): ReturnType<typeof createDocument> {
       },
     },
     // Fields may be added to answers, so nobody may rely on there being no others.
-    { override: ({ jsonSchema, io }) => void (io === 'output' && delete jsonSchema.additionalProperties) },
+    { override: ({ jsonSchema, io }) => void (io === 'output' && jsonSchema.additionalProperties === false && delete jsonSchema.additionalProperties) },
   );
   return made;
 }
