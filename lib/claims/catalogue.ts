@@ -24,7 +24,7 @@ export const quantityIds = [
 
 /** Settings of the format that only quantities not built yet know. */
 export const laterSettings = [
-  'alignment', 'joinHz', 'amplitudeOrder', 'formalOrder', 'weight', 'at', 'observable', 'method', 'fit', 'statistic', 'extrapolationOrder',
+  'joinHz', 'amplitudeOrder', 'formalOrder', 'weight', 'observable', 'method', 'fit', 'statistic', 'extrapolationOrder',
   'fieldGauss', 'plasmaDensityCm3', 'radiativeEfficiency', 'accretionRateMsunPerYear', 'internalEnergyErg', 'radiusM',
 ] as const;
 

@@ -4,7 +4,7 @@ import type { Problem } from '@/lib/kernel/problem';
 import { laterSettings, type Catalogue } from './catalogue';
 import { checkPart, unknownName } from './check-part';
 import { describe, pointer } from './pointer';
-import { expectation, settingSchema } from './setting-schema';
+import { settingSchema, sweptExpectation, sweptNumber, sweptSchema } from './setting-schema';
 
 const mostSwept = 2000;
 type Path = readonly PropertyKey[];
@@ -33,8 +33,15 @@ function settingFault(name: string, quantity: Quantity, catalogue: Catalogue, pa
   if (allowed.includes(name)) return null;
   const later = (laterSettings as readonly string[]).includes(name);
   if (!later && !catalogue.settings.has(name)) return unknownName(name, path, allowed);
-  const hint = name === 'maximise' && quantity.id === 'overlap' ? 'An overlap is not maximised; the quantity "match" is.' : undefined;
+  const hint = whyNot(name, quantity.id);
   return { code: 'claims/setting-not-for-quantity', where: pointer(...path, name), saw: `the setting "${name}"`, expected: `a setting of ${quantity.id}: ${allowed.join(', ')}`, ...(hint ? { hint } : {}) };
+}
+
+/** Where the reason is not plain from the list of what is allowed. */
+function whyNot(name: string, quantity: string): string | undefined {
+  if (name === 'maximise' && quantity === 'overlap') return 'An overlap is not maximised; the quantity "match" is.';
+  if (name === 'includeEnergyBeforeStart' && quantity === 'radiated-angular-momentum') return 'The angular momentum radiated since infinite separation has no bound; only that of the record can be claimed.';
+  return undefined;
 }
 
 /** `over`: exactly one setting that this quantity lets sweep, with a list of values in range. */
@@ -62,11 +69,12 @@ function sweptValues(values: unknown, row: Parameters<typeof settingSchema>[0], 
     problems.push({ code: 'claims/sweep', where: pointer(...at), saw: describe(values), expected: `a list of 1 to ${mostSwept} values` });
     return [];
   }
-  const schema = settingSchema(row);
+  const schema = sweptSchema(row);
   return values.flatMap((value, i) => {
     const parsed = checkPart(schema, value, [...at, i], [], problems);
-    if (typeof parsed === 'number') return [parsed];
-    if (parsed !== null) problems.push({ code: 'claims/sweep', where: pointer(...at, i), saw: describe(value), expected: `numbers in a sweep (${expectation(row)})` });
+    const number = sweptNumber(row, parsed);
+    if (number !== null) return [number];
+    if (parsed !== null) problems.push({ code: 'claims/sweep', where: pointer(...at, i), saw: describe(value), expected: sweptExpectation(row) });
     return [];
   });
 }

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
 import { resultSchema } from './result-schema';
-import { settingSchema } from './setting-schema';
+import { settingSchema, sweptSchema } from './setting-schema';
 import { claimSchema, noiseSchema, sheetSchema, waveformSchema } from './sheet-schema';
 import type { Catalogue } from './catalogue';
 
@@ -19,7 +19,7 @@ export function claimSheetJsonSchema(catalogue: Catalogue): JsonSchema {
   const rows = [...catalogue.settings.values()];
   const settings = z.strictObject(Object.fromEntries(rows.map((row) => [row.name, described(row).optional()])));
   const sweeps = [...new Set([...catalogue.quantities.values()].flatMap((quantity) => quantity.sweepable))].sort();
-  const swept = rows.filter((row) => sweeps.includes(row.name)).map((row) => z.strictObject({ [row.name]: z.array(described(row)).min(1) }));
+  const swept = rows.filter((row) => sweeps.includes(row.name)).map((row) => z.strictObject({ [row.name]: z.array(described(row, sweptSchema(row))).min(1) }));
   const claim = claimSchema.extend({
     quantity: z.enum([...catalogue.quantities.keys()]),
     of: z.strictObject({ a: z.string().optional(), b: z.string().optional() }),
@@ -35,7 +35,7 @@ export function claimSheetJsonSchema(catalogue: Catalogue): JsonSchema {
   return toJsonSchema(sheet, 'counterfoil-claim/1', 'A claim sheet of Counterfoil');
 }
 
-const described = (row: SettingRow): z.ZodType => settingSchema(row).describe(`${row.meaning}${row.unit === '' ? '' : ` Unit: ${row.unit}.`} House default: ${row.houseDefault}.`);
+const described = (row: SettingRow, schema: z.ZodType = settingSchema(row)): z.ZodType => schema.describe(`${row.meaning}${row.unit === '' ? '' : ` Unit: ${row.unit}.`} House default: ${row.houseDefault}.`);
 
 export const resultJsonSchema = (): JsonSchema => toJsonSchema(resultSchema, 'counterfoil-result/1', 'What one run of Counterfoil says about one claim sheet');
 

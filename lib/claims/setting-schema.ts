@@ -9,6 +9,23 @@ export function settingSchema(row: SettingRow): z.ZodType {
 const unitAfter = (row: SettingRow): string => (row.unit === '' ? '' : ` ${row.unit}`);
 const quoted = (option: string | boolean): string => (typeof option === 'string' ? `"${option}"` : String(option));
 
+/** Schema of one value of a sweep: the setting itself, or the one number of a place that may be swept. */
+export function sweptSchema(row: SettingRow): z.ZodType {
+  const { shape } = row;
+  if (shape.kind !== 'place' || shape.swept === undefined) return settingSchema(row);
+  const number = shape.numbers.find(({ name }) => name === shape.swept) ?? {};
+  return z.strictObject({ [shape.swept]: bounded(number, sweptExpectation(row)) }, { error: sweptExpectation(row) });
+}
+
+/** What a sweep over the setting takes, in words. */
+export const sweptExpectation = (row: SettingRow): string => (row.shape.kind === 'place' && row.shape.swept !== undefined ? `{"${row.shape.swept}": number} in each entry` : `numbers in a sweep (${expectation(row)})`);
+
+/** The number in a value of a sweep; null where it has none. */
+export function sweptNumber({ shape }: SettingRow, value: unknown): number | null {
+  const inner = shape.kind === 'place' && shape.swept !== undefined && typeof value === 'object' && value !== null ? (value as Readonly<Record<string, unknown>>)[shape.swept] : value;
+  return typeof inner === 'number' ? inner : null;
+}
+
 /** What the setting takes, in words. */
 export function expectation(row: SettingRow): string {
   const { shape } = row;
@@ -31,6 +48,8 @@ export function expectation(row: SettingRow): string {
       return `"auto", "none" or a number from ${shape.min} to ${shape.max}`;
     case 'cosmology':
       return '{"h0": 20 to 150, "omegaM": 0 to 1}';
+    case 'place':
+      return `one of ${shape.options.map(quoted).join(', ')}, or ${shape.numbers.map((number) => `{"${number.name}": number${rangeWords(number)}}`).join(' or ')}`;
   }
 }
 
@@ -73,6 +92,8 @@ function shapeSchema(shape: SettingShape, error: string): z.ZodType {
       return z.union([z.literal(['auto', 'none']), bounded(shape, error)], { error });
     case 'cosmology':
       return z.strictObject({ h0: z.number().min(20).max(150), omegaM: z.number().min(0).max(1) }, { error });
+    case 'place':
+      return z.union([literals(shape.options, error), ...shape.numbers.map((number) => z.strictObject({ [number.name]: bounded(number, error) }, { error }))], { error });
   }
 }
 

@@ -29,6 +29,7 @@ const within = ({ value, tolerance, kind }: Figure) => [value, kind === 'rel' ? 
 
 const cases: readonly (readonly [sheet: string, ids: readonly string[]])[] = [
   ['simulation', ['ringdown-f', 'ringdown-d', 'ringdown-f-house', 'ringdown-d-house']],
+  ['run5-alignment', ['amplitude', 'phase']],
 ];
 
 describe.runIf(isThere).each(cases)(title('the reference sheet %s (required: published; closed forms, checks.json G6, and an independent script)'), (name, ids) => {

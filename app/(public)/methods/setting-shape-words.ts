@@ -28,6 +28,8 @@ function words(shape: SettingShape): string {
       return `auto, none, or a number${rangeOf(shape)}`;
     case 'cosmology':
       return 'two numbers {h0, omegaM}';
+    case 'place':
+      return `one of ${shape.options.join(', ')}, or one number ${shape.numbers.map((number) => `{${number.name}${rangeOf(number)}}`).join(' or ')}`;
   }
 }
 

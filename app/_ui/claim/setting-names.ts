@@ -29,6 +29,8 @@ const words: Readonly<Record<string, SettingWords>> = {
   startM: { label: 'Start of integrals', unit: 'M' },
   window: { label: 'Window', unit: 'M' },
   integrationFloor: { label: 'Integration floor', unit: 'rad/M' },
+  alignment: { label: 'Alignment' },
+  at: { label: 'Read at', unit: 'M' },
   includeEnergyBeforeStart: { label: 'Energy before the start' },
   normaliseBy: { label: 'Referred to' },
   parameters: { label: 'Parameters' },

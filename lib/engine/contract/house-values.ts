@@ -20,6 +20,8 @@ export const houseValues = {
   cosmology: houseCosmology,
   includeEnergyBeforeStart: false,
   normaliseBy: 'M',
+  alignment: 'window',
+  at: 'peak',
   parameters: 1,
   rateLaw: 'euclidean',
   templateMassRange: [0.5, 2],

@@ -4,6 +4,10 @@
  */
 export type Response = 'plus' | 'cross' | 'complex' | { readonly plus: number; readonly cross: number };
 export type MaximiseOver = 'time' | 'phase' | 'polarisation' | 'inclination' | 'templateMass';
+/** How two records are laid over each other. */
+export type Alignment = 'window' | 'peak' | 'none' | { readonly frequencyM: number };
+/** Where a curve is read. */
+export type ReadAt = 'peak' | 'end' | 'window' | 'maximum' | { readonly timeM: number } | { readonly frequencyM: number };
 export type ModeIndex = readonly [l: number, m: number];
 
 export interface DeclaredSettings {
@@ -30,6 +34,8 @@ export interface DeclaredSettings {
   readonly integrationFloor?: number;
   readonly includeEnergyBeforeStart?: false | true | 'removed';
   readonly normaliseBy?: 'M' | 'adm' | 'remnant';
+  readonly alignment?: Alignment;
+  readonly at?: ReadAt;
   readonly parameters?: number;
   readonly rateLaw?: 'euclidean' | 'comoving';
   readonly templateMassRange?: readonly [number, number];

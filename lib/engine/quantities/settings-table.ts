@@ -1,4 +1,4 @@
-import { houseValues } from '@/lib/engine/contract/house-values';
+import { houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
 import type { SettingName } from '@/lib/engine/contract/settings';
 
 /**
@@ -15,7 +15,9 @@ export type SettingShape =
   | { readonly kind: 'modes' }
   | { readonly kind: 'response' }
   | { readonly kind: 'taper'; readonly min: number; readonly max: number }
-  | { readonly kind: 'cosmology' };
+  | { readonly kind: 'cosmology' }
+  /** A word, or one named number such as {"timeM": 100}; `swept` names the number that a sweep goes over. */
+  | { readonly kind: 'place'; readonly options: readonly string[]; readonly numbers: readonly { readonly name: string; readonly above?: number }[]; readonly swept?: string };
 
 export interface SettingRow {
   readonly name: SettingName;
@@ -57,7 +59,9 @@ const rows: readonly SettingRow[] = [
   row('threshold', { kind: 'number', above: 0 }, '', `${said('threshold')} for loudness`, 'The loudness, or the match, at which something counts as seen.'),
   row('cosmology', { kind: 'cosmology' }, '', `h0 ${h0} km/s/Mpc, omegaM ${omegaM}, flat`, 'Expansion used between redshift and distance.'),
   row('startM', { kind: 'number' }, 'M', 'the end of the start-up burst, else the first sample', 'Start of integrals over time.'),
-  row('window', { kind: 'interval' }, 'M', 'by quantity', 'Interval of time that is used.'),
+  row('window', { kind: 'interval' }, 'M', `for a ringdown [${ringdownWindow.join(', ')}] after the peak; for an alignment from 10 % to 40 % of the way from the later start to the peak of the first record`, 'Interval of time that is used: counted from the peak for a ringdown, on the first record’s own times for an alignment.'),
+  row('alignment', { kind: 'place', options: ['window', 'peak', 'none'], numbers: [{ name: 'frequencyM', above: 0 }] }, '', said('alignment'), 'How the second record is laid over the first in time and phase: over the window, at the peaks, where both reach a frequency (rad/M), or not at all.'),
+  row('at', { kind: 'place', options: ['peak', 'end', 'window', 'maximum'], numbers: [{ name: 'timeM' }, { name: 'frequencyM', above: 0 }], swept: 'timeM' }, 'M', said('at'), 'Where the difference is read: at the peak or the end of the first record, as a mean over the window, where it is largest, at a time, or where the first record reaches a frequency (rad/M).'),
   row('integrationFloor', { kind: 'number', above: 0 }, 'rad/M', 'half of ω₂₂ at the start', 'Lowest frequency by which a time integral divides.'),
   row('includeEnergyBeforeStart', { kind: 'choice', options: [false, true, 'removed'] }, '', said('includeEnergyBeforeStart'), 'Adds what was radiated before the start.'),
   row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', said('normaliseBy'), 'The mass to which the number is referred.'),

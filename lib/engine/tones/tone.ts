@@ -50,3 +50,20 @@ export function thinned(tone: Tone): Tone {
   const half = (values: Float64Array): Float64Array => values.filter((_, i) => i % 2 === 0);
   return { ...tone, axis: half(tone.axis), re: half(tone.re), im: half(tone.im) };
 }
+
+/**
+ * Samples from one time to another; the whole tone when that is all of it.
+ * Shape:  views of the same samples.
+ * Units:  times in M.
+ * Error:  none.
+ * Fails:  never.
+ * Source: definition.
+ */
+export function within(tone: Tone, from: number, to: number): Tone {
+  const { axis } = tone;
+  if (from <= axis[0]! && to >= axis[axis.length - 1]!) return tone;
+  const part = stretchOf(tone, from, to, 0);
+  const skip = part.axis[0]! < from ? 1 : 0;
+  const end = part.axis[part.axis.length - 1]! > to ? part.axis.length - 1 : part.axis.length;
+  return { ...part, axis: part.axis.subarray(skip, end), re: part.re.subarray(skip, end), im: part.im.subarray(skip, end) };
+}

@@ -85,10 +85,11 @@ const sample: Readonly<Record<SettingRow['shape']['kind'], (row: SettingRow) => 
   modes: () => fc.constantFrom('all', [[2, 2], [3, -3]]),
   response: () => fc.constantFrom('plus', 'cross', 'complex', { plus: 0.25, cross: 0.75 }),
   taper: () => fc.constantFrom('auto', 'none', 2),
+  place: (row) => fc.constantFrom<unknown>(...(row.shape.kind === 'place' ? [...row.shape.options, ...row.shape.numbers.map(({ name }) => ({ [name]: 0.25 }))] : [])),
   cosmology: () => fc.record({ h0: fc.integer({ min: 20, max: 150 }), omegaM: fc.constant(0.3) }),
 };
 /** What a reader would look for, where the words are not simply label and value. */
-const inWords: Readonly<Record<string, RegExp>> = { maximise: /maximised over|not maximised/, modes: /all modes|modes \(/, lMax: /ℓ ≤/, average: /average/, detectors: /detector/, response: /response/, taper: /taper/, cosmology: /cosmology with H₀/, rateLaw: /rate law/, parameters: /parameter/, includeEnergyBeforeStart: /energy (before|since|between)/, normaliseBy: /referred to/, startM: /integrated from/, templateMassRange: /template mass from/, fLowHz: /band from/, fHighHz: /band from .* to /, massFrame: /in the (detector|source) frame/ };
+const inWords: Readonly<Record<string, RegExp>> = { maximise: /maximised over|not maximised/, modes: /all modes|modes \(/, lMax: /ℓ ≤/, average: /average/, detectors: /detector/, response: /response/, taper: /taper/, cosmology: /cosmology with H₀/, rateLaw: /rate law/, parameters: /parameter/, includeEnergyBeforeStart: /energy (before|since|between)/, normaliseBy: /referred to/, alignment: /aligned/, at: /read (at|where|as)/, startM: /integrated from/, templateMassRange: /template mass from/, fLowHz: /band from/, fHighHz: /band from .* to /, massFrame: /in the (detector|source) frame/ };
 const numbersIn = (value: unknown): readonly number[] => (typeof value === 'number' ? [value] : typeof value === 'object' && value !== null ? Object.values(value).flatMap(numbersIn) : []);
 
 describe('every setting that a quantity takes', () => {

@@ -45,6 +45,8 @@ export function settingFrom(name: string, typed: string): unknown {
   if (!shape) return parsed(trimmed);
   if (shape.kind === 'choice') return shape.options.find((option) => String(option) === trimmed) ?? trimmed;
   if (shape.kind === 'subset' && !trimmed.startsWith('[')) return trimmed.split(/[\s,;]+/);
+  // A bare number at a place is the one that can be swept: a time, for `at`.
+  if (shape.kind === 'place' && shape.swept !== undefined && Number.isFinite(Number(trimmed))) return { [shape.swept]: Number(trimmed) };
   return parsed(trimmed);
 }
 

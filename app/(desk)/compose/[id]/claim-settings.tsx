@@ -41,6 +41,7 @@ function rangeOf({ shape, unit }: SettingRow): string {
   if (shape.kind === 'cosmology') return 'for example {"h0":67.4,"omegaM":0.315}';
   if (shape.kind === 'interval') return `[from, to] ${unit}`.trim();
   if (shape.kind === 'subset') return shape.options.join(', ');
+  if (shape.kind === 'place') return `${shape.options.join(', ')}, or for example {"${shape.numbers[0]?.name ?? 'timeM'}":0.3}`;
   return '';
 }
 

@@ -53,6 +53,22 @@ function taperText(value: unknown): string {
   return value === 'none' ? 'no taper' : `house taper with ramps × ${formatSetting('', value)}`;
 }
 
+/** Where two records are laid over each other, and where what is left is read. */
+function alignedText(value: unknown): string {
+  const parts = loose(value);
+  if (parts) return `aligned where both reach ${formatSetting('', parts['frequencyM'])} rad/M`;
+  return value === 'none' ? 'not aligned' : value === 'peak' ? 'aligned at the peaks' : 'aligned over the window';
+}
+
+const readings: Readonly<Record<string, string>> = { peak: 'read at the peak', end: 'read at the end of the common interval', window: 'read as the mean over the window', maximum: 'read where it is largest up to the peak' };
+
+function readText(value: unknown): string {
+  if (typeof value === 'number') return `read at t = ${formatSetting('', value)} M`;
+  const parts = loose(value);
+  if (parts && 'frequencyM' in parts) return `read where the first reaches ${formatSetting('', parts['frequencyM'])} rad/M`;
+  return parts ? `read at t = ${formatSetting('', parts['timeM'])} M` : (readings[String(value)] ?? `read at ${String(value)}`);
+}
+
 /** Names whose value alone, or label and value alone, would be misread in running text. */
 const special: Readonly<Record<string, (value: unknown, setting: UsedSetting, inDetector: boolean) => string>> = {
   maximise: maximisedText,
@@ -63,6 +79,8 @@ const special: Readonly<Record<string, (value: unknown, setting: UsedSetting, in
   response: responseText,
   taper: taperText,
   cosmology: cosmologyText,
+  alignment: alignedText,
+  at: readText,
   rateLaw: (value) => `${formatSetting('', value)} rate law`,
   parameters: (value) => `${formatSetting('', value)} ${value === 1 ? 'parameter' : 'parameters'}`,
   includeEnergyBeforeStart: (value) => before[String(value)] ?? `energy before the start: ${String(value)}`,
