@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
+import { serveAuth } from '@/lib/http/serve-auth';
 import { mayGenerally } from '@/lib/policy/grant';
 import { confirmAddress, giveAddress, giveUpAccount } from '@/lib/services/accounts/give-address';
 import { getOwnAccount } from '@/lib/services/accounts/get-own-account';
@@ -168,6 +169,16 @@ describe('the doors to ORCID', () => {
     for (const name of ['state', 'nonce', 'code_challenge']) expect(asked.get(name)?.length, name).toBeGreaterThan(30);
     expect(asked.get('redirect_uri')).toMatch(/\/api\/auth\/callback\/orcid$/);
     expect(asked.get('scope')).toBe('openid');
+  });
+
+  it('say so while ORCID is away, and no other door waits for it', async () => {
+    const { ORCID_ISSUER } = process.env;
+    process.env['ORCID_ISSUER'] = 'http://127.0.0.1:9';
+    const elsewhere = 'http://localhost:3210';
+    const answer = await serveAuth(new Request(`${elsewhere}/api/auth/sign-in/social`, { method: 'POST', headers: { origin: elsewhere, 'content-type': 'application/json' }, body: '{"next":"/"}' }));
+    expect([answer.status, ((await answer.json()) as { code: string }).code]).toEqual([404, 'PROVIDER_NOT_FOUND']);
+    expect((await new Visitor().signIn('j-pellworm@larkfield.example')).status).toBe(200);
+    Object.assign(process.env, { ORCID_ISSUER });
   });
 
   it('are not there where ORCID is not configured', async () => {
