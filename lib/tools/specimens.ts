@@ -227,9 +227,38 @@ function radiatedEnergy(): SpecimenFile[] {
   ];
 }
 
+/** Late enough to be small, early enough that neither peak nor recoil feels the start. */
+const twoToOneRequest: SynthesisRequest = { massRatio: 2, chi1z: 0, chi2z: 0, mOmega0: 0.03, stepM: 0.4, modes: ['22', '21', '33', '44', '32'] };
+
+function twoToOne(): SpecimenFile[] {
+  const wave = synthesise(twoToOneRequest);
+  const statement = [
+    'Larkfield Wave Group, code *Tinderbox*.',
+    '',
+    'From an orbital frequency of $M\\Omega=0.03$ on, a non-spinning merger of mass ratio 2 radiates an angular momentum of $0.261\\,M^2$; its luminosity peaks at $8.44\\times10^{-4}\\,c^5/G$, and the remnant is left with a recoil of 138 km/s (momentum over M).',
+    '',
+    'Modes (2,±2), (2,±1), (3,±3), (3,±2), (4,±4); those with m < 0 are the mirrors of those given.',
+  ].join('\n');
+  const of = { a: 'A' };
+  return [
+    sheet({
+      title: 'What a merger of mass ratio 2 carries away',
+      statement,
+      waveforms: { A: waveform('modes.txt', wave.modes, { binary: binaryFacts(twoToOneRequest) }) },
+      claims: [
+        { id: 'C1', quantity: 'radiated-angular-momentum', of, settings: { startM: 0 }, claimed: '0.261' },
+        { id: 'C2', quantity: 'peak-luminosity', of, claimed: '8.44e-4' },
+        { id: 'C3', quantity: 'recoil', of, settings: { startM: 0, normaliseBy: 'M' }, claimed: '138' },
+      ],
+    }),
+    modesFile('modes.txt', 'Larkfield Wave Group, Tinderbox run 31, mass ratio 2', twoToOneRequest, wave),
+  ];
+}
+
 export const specimens: readonly Specimen[] = [
   { folder: 'spin-visible', files: spinVisible },
   { folder: 'loudness', files: loudness },
   { folder: 'precise-match', files: preciseMatch },
   { folder: 'radiated-energy', files: radiatedEnergy },
+  { folder: 'two-to-one', files: twoToOne },
 ];

@@ -1,4 +1,4 @@
-import type { MeasureRequest } from '@/lib/engine/contract/quantity';
+import type { MeasureRequest, Quantity } from '@/lib/engine/contract/quantity';
 import type { Measurement } from '@/lib/engine/contract/measurement';
 import type { DeclaredSettings } from '@/lib/engine/contract/settings';
 import type { BinaryFacts, Mode, Variable, Waveform } from '@/lib/engine/contract/waveform';
@@ -25,7 +25,8 @@ export function modeSet(axis: Float64Array, modes: readonly Mode[], variable: Va
   };
 }
 
-export function measureEnergyOf(
+export function measureOf(
+  quantity: Quantity,
   waveform: Waveform,
   settings: DeclaredSettings = {},
   over: MeasureRequest['over'] = null,
@@ -33,12 +34,17 @@ export function measureEnergyOf(
 ): Measurement {
   const claimed = over === null ? [null] : over.values.map(() => null);
   const request: MeasureRequest = { claimId: 'E', inputs: { of: { a: waveform }, noise: null }, settings, over, claimed, withFigures };
-  return radiatedEnergy.measure(request, { onProgress: () => undefined, cancelled: () => false });
+  return quantity.measure(request, { onProgress: () => undefined, cancelled: () => false });
 }
 
+export const measureEnergyOf = (...[waveform, settings, over, withFigures]: Parameters<typeof measureOf> extends [Quantity, ...infer Rest] ? Rest : never): Measurement =>
+  measureOf(radiatedEnergy, waveform, settings, over, withFigures);
+
 /** The number by the route asked for; NaN when it was not computed. */
-export const energyBy = (route: 'A' | 'B', waveform: Waveform, settings: DeclaredSettings = {}): number =>
-  measureEnergyOf(waveform, settings).points[0]?.routes[route] ?? Number.NaN;
+export const numberBy = (quantity: Quantity, route: 'A' | 'B', waveform: Waveform, settings: DeclaredSettings = {}): number =>
+  measureOf(quantity, waveform, settings).points[0]?.routes[route] ?? Number.NaN;
+
+export const energyBy = (route: 'A' | 'B', waveform: Waveform, settings: DeclaredSettings = {}): number => numberBy(radiatedEnergy, route, waveform, settings);
 
 /** One complex series sampled from a closed form. */
 export function modeFrom(axis: Float64Array, l: number, m: number, at: (t: number) => readonly [number, number]): Mode {

@@ -57,3 +57,15 @@ describe('four per cent of the mass radiated', () => {
     expect(claims.get('C1')?.verdict).toBe('agrees');
   });
 });
+
+/** Required: an independent numpy script (cubic splines, trapezoids) over the same file; the design study has 140 km/s for an earlier start. */
+describe('what a merger of mass ratio 2 carries away', () => {
+  beforeAll(async () => void (claims = await runFolder(folder('two-to-one'))), 120_000);
+  it('recomputes 0.26074, 8.4346e-4 and 137.64 km/s towards −151°, and agrees', () => {
+    expect(values('C1')[0]).toAgreeWith(0.260744801, { relative: 1e-4 });
+    expect(values('C2')[0]).toAgreeWith(8.43463864e-4, { relative: 1e-4 });
+    expect(values('C3')[0]).toAgreeWith(137.640765, { relative: 1e-4 });
+    expect(claims.get('C3')?.points[0]?.components?.directionDeg).toAgreeWith(-150.952206, 1e-2);
+    expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees', 'agrees']);
+  });
+});

@@ -1,4 +1,4 @@
-import { houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
+import { houseRecoilMass, houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
 import type { SettingName } from '@/lib/engine/contract/settings';
 
 /**
@@ -64,7 +64,7 @@ const rows: readonly SettingRow[] = [
   row('at', { kind: 'place', options: ['peak', 'end', 'window', 'maximum'], numbers: [{ name: 'timeM' }, { name: 'frequencyM', above: 0 }], swept: 'timeM' }, 'M', said('at'), 'Where the difference is read: at the peak or the end of the first record, as a mean over the window, where it is largest, at a time, or where the first record reaches a frequency (rad/M).'),
   row('integrationFloor', { kind: 'number', above: 0 }, 'rad/M', 'half of ω₂₂ at the start', 'Lowest frequency by which a time integral divides.'),
   row('includeEnergyBeforeStart', { kind: 'choice', options: [false, true, 'removed'] }, '', said('includeEnergyBeforeStart'), 'Adds what was radiated before the start.'),
-  row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', said('normaliseBy'), 'The mass to which the number is referred.'),
+  row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', `${said('normaliseBy')}; ${houseRecoilMass} for recoil`, 'The mass to which the number is referred.'),
   row('parameters', { kind: 'integer', min: 1, max: 20 }, '', said('parameters'), 'Number of parameters in the criterion.'),
   row('rateLaw', { kind: 'choice', options: ['euclidean', 'comoving'] }, '', said('rateLaw'), 'How loudness becomes volume.'),
   row('templateMassRange', { kind: 'interval', min: 0.01, max: 100 }, '× M', said('templateMassRange'), 'Range of the template’s mass when it is maximised over.'),

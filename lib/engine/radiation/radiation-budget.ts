@@ -73,12 +73,13 @@ function floorLine({ settings: { floor } }: PreparedPoint, elsewhere: Elsewhere)
 
 /**
  * E09: the modes above the last ℓ, as the tail of a geometric series in what each ℓ adds. Symmetry can
- * silence every other ℓ, so the ratio is taken over two steps where the file has three. One-sided: half
- * of it ± half/√3; we leave the value as it is and give the whole over √3.
+ * silence every other ℓ, so the ratio is taken over two steps where the file has three and ℓ does not
+ * multiply its neighbours. One-sided: half of it ± half/√3; we leave the value as it is and give the whole over √3.
  */
-function modesLine(shares: readonly EllShare[], noun: string): BudgetLine {
+function modesLine(shares: readonly EllShare[], { noun, couplesEll }: RadiationRecipe): BudgetLine {
   const base = { component: 'Modes left out', id: 'E09', group: 'coverage' } as const;
-  const [last, before, earlier] = [shares.at(-1), shares.at(-2), shares.at(-3)];
+  const [last, before] = [shares.at(-1), shares.at(-2)];
+  const earlier = couplesEll ? undefined : shares.at(-3);
   if (!last || !before) return { ...base, u: null, note: 'One ℓ alone gives no trend to continue.' };
   const from = earlier ?? before;
   const ratio = last.size / from.size;
@@ -130,6 +131,6 @@ export function radiationBudget(measuring: Measuring, here: Outcome): BudgetLine
     { component: 'Extraction radius', id: 'E06', group: 'coverage', u: null, note: 'Not available: one radius.' },
     startLine(point, elsewhere),
     ...floorLine(point, elsewhere),
-    modesLine(recipe.shares(point, store, here), recipe.noun),
+    modesLine(recipe.shares(point, store, here), recipe),
   ];
 }

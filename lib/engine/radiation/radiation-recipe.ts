@@ -81,6 +81,8 @@ export interface RadiationRecipe {
   readonly byRouteB: (point: PreparedPoint) => Outcome | null;
   /** Standard uncertainty from the printed digits of the input. */
   readonly rounding: (point: PreparedPoint, store: SampledStore, digits: number | null, outcome: Outcome) => number;
+  /** Does each ℓ multiply its neighbours, so that symmetry silences none? */
+  readonly couplesEll?: true;
   /** Ascending in ℓ. */
   readonly shares: (point: PreparedPoint, store: SampledStore, outcome: Outcome) => EllShare[];
   /** Components that mean nothing within the uncertainty become null. */

@@ -24,3 +24,9 @@ export const MSUN_PER_MPC = MSUN_M / MPC_M;
 
 /** Speed of light in km/s, for c/H₀. */
 export const C_KM_PER_S = C_M_PER_S / 1000;
+
+/** Newton's constant in m³/(kg s²). Source: CODATA 2018 and 2022, relative uncertainty 2.2e-5. */
+export const G_M3_PER_KG_S2 = 6.6743e-11;
+
+/** c⁵/G in erg/s: the luminosity of which a flux in units of the mass is a fraction (3.62825e59). */
+export const LUMINOSITY_ERG_PER_S = (C_M_PER_S ** 5 / G_M3_PER_KG_S2) * 1e7;

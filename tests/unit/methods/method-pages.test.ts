@@ -5,7 +5,7 @@ import { parseGlossary } from '@/app/(public)/methods/glossary/parse-glossary';
 import { parseMethodPage, SETTINGS_HEADING } from '@/app/(public)/methods/parse-method-page';
 import { shapeWords } from '@/app/(public)/methods/setting-shape-words';
 import { RECORD_STANDINGS } from '@/lib/badges/standing';
-import { houseValues } from '@/lib/engine/contract/house-values';
+import { houseRecoilMass, houseValues } from '@/lib/engine/contract/house-values';
 import type { SettingName } from '@/lib/engine/contract/settings';
 import { quantities } from '@/lib/engine/quantities/registry';
 import { settingsTable } from '@/lib/engine/quantities/settings-table';
@@ -46,7 +46,8 @@ describe('a house default', () => {
     expect(row('templateMassRange').houseDefault).toBe(`[${houseValues.templateMassRange.join(', ')}]`);
     expect(row('maximise').houseDefault).toBe(houseValues.maximise.join(', '));
     expect(row('cosmology').houseDefault).toBe(`h0 ${houseValues.cosmology.h0} km/s/Mpc, omegaM ${houseValues.cosmology.omegaM}, flat`);
-    for (const name of ['response', 'average', 'modes', 'rateLaw', 'normaliseBy', 'detectors', 'armAngleDeg', 'parameters', 'includeEnergyBeforeStart'] as const) expect(row(name).houseDefault, name).toBe(String(houseValues[name]));
+    expect(row('normaliseBy').houseDefault).toBe(`${houseValues.normaliseBy}; ${houseRecoilMass} for recoil`);
+    for (const name of ['response', 'average', 'modes', 'rateLaw', 'detectors', 'armAngleDeg', 'parameters', 'includeEnergyBeforeStart'] as const) expect(row(name).houseDefault, name).toBe(String(houseValues[name]));
   });
 
   it('has no second spelling in the engine', () => {
