@@ -47,7 +47,8 @@ function integrationLine(point: PairPoint, value: number, which: Which): BudgetL
 }
 
 /**
- * Lines that make U: local polynomials of order 8 against 6 with half of the grid, and the digits of the files.
+ * Lines that make U: local polynomials of order 8 against 6 with half of the grid and the peak by the
+ * five-sample parabola, and the digits of the files.
  * Shape:  two lines; a third where H was integrated.
  * Units:  those of the value.
  * Error:  half-width over √3.
@@ -60,7 +61,7 @@ export function pairComputation(point: PairPoint, result: PairResult, which: Whi
   const moved = 'because' in other ? Number.NaN : Math.abs(valueOf(other, which) - value);
   const size = which === 'phase' ? Math.max(1, Math.abs(result.aligned.phaseShift)) : 1;
   return [
-    { component: 'Interpolation and sums over the window', id: 'E01', group: 'computation', u: Math.max(moved / ROOT3, LEAST * size), note: 'Local polynomials of order 8 against 6, half of the grid; half-width over √3.' },
+    { component: 'Interpolation, sums and time of the peak', id: 'E01', group: 'computation', u: Math.max(moved / ROOT3, LEAST * size), note: 'Local polynomials of order 8 against 6, half of the grid, peak by a polynomial against the five-sample parabola; half-width over √3.' },
     ...integrationLine(point, value, which),
     roundingLine(point, result, which),
   ];

@@ -12,10 +12,11 @@ export interface PairNumerics {
   readonly quadrature: 4 | 6 | 8;
   /** Grid points a sample of the window. */
   readonly density: number;
+  readonly peak: 'polynomial' | 'parabola';
 }
 
-export const housePair: PairNumerics = { interpolation: 8, stencil: 13, quadrature: 8, density: 2 };
-export const coarserPair: PairNumerics = { interpolation: 6, stencil: 9, quadrature: 6, density: 1 };
+export const housePair: PairNumerics = { interpolation: 8, stencil: 13, quadrature: 8, density: 2, peak: 'polynomial' };
+export const coarserPair: PairNumerics = { interpolation: 6, stencil: 9, quadrature: 6, density: 1, peak: 'parabola' };
 
 /** Phase (increasing for house rotation), its slope and amplitude at the samples of a tone. */
 interface Followed {
@@ -115,8 +116,8 @@ export function pairOnSamples(toneA: Tone, toneB: Tone, numerics: PairNumerics):
   };
   return {
     firstA: a.axis[0]!, lastA: a.axis[a.axis.length - 1]!, firstB: b.axis[0]!, lastB: b.axis[b.axis.length - 1]!,
-    peakOfA: (from, to) => peakOnSamples(within(toneA, from, to)),
-    peakOfB: () => peakOnSamples(toneB),
+    peakOfA: (from, to) => peakOnSamples(within(toneA, from, to), numerics.peak),
+    peakOfB: () => peakOnSamples(toneB, numerics.peak),
     reachedByA: (omega) => reached(a, omega, order),
     reachedByB: (omega) => reached(b, omega, order),
     frequencyOfB: (t) => interpolatePair({ axis: b.axis, first: b.omega, second: b.phase }, { t0: t, dt: 1, n: 1 }, order)[0][0]!,
