@@ -69,3 +69,27 @@ describe('what a merger of mass ratio 2 carries away', () => {
     expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees', 'agrees']);
   });
 });
+
+/**
+ * Required: the drift of the coarser run is 0.05 rad and 0.002 by construction; lines and alignment by an independent
+ * numpy script (cubic splines, exact edges, Gauss sums) over the same files; the tone itself from the quasi-normal table.
+ */
+describe('how the remnant rings, and what a coarser run changes', () => {
+  beforeAll(async () => void (claims = await runFolder(folder('ringdown-and-resolution'))), 120_000);
+  it('recomputes 0.55541 and 0.08549, near the Kerr values 0.55347 and 0.08542', () => {
+    expect(values('C1')[0]).toAgreeWith(0.5554165, { relative: 2e-5 });
+    expect(values('C2')[0]).toAgreeWith(0.0854899, { relative: 1e-4 });
+    expect(claims.get('C1')?.points[0]?.components?.predicted).toAgreeWith(0.55347, { relative: 3e-4 });
+    expect(claims.get('C2')?.points[0]?.components?.predicted).toAgreeWith(0.08542, { relative: 3e-4 });
+  });
+  it('finds the drift that was put in, and what an early alignment makes of it', () => {
+    expect(values('C3')[0]).toAgreeWith(0.05, 1e-6);
+    expect(values('C5')[0]).toAgreeWith(0.002, 1e-6);
+    const { value, expandedUncertainty, components } = claims.get('C4')!.points[0]!;
+    expect(value).toAgreeWith(-0.5749647, expandedUncertainty!);
+    expect(components!.timeShiftM).toAgreeWith(-2.0079456, 1e-4);
+  });
+  it('agrees throughout', () => {
+    expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees', 'agrees', 'agrees', 'agrees']);
+  });
+});

@@ -33,7 +33,7 @@ function settingsOf(point: PairPoint, { aligned }: PairResult, request: MeasureR
       ...(mode === null ? [] : [{ name: 'modes', value: [mode], matters: severalModes } as const]),
       { name: 'alignment', value: settings.alignment, matters: true },
       ...(usesWindow ? [{ name: 'window', value: aligned.window, unit: 'M', matters: true } as const] : []),
-      { name: 'at', value: settings.at, unit: 'M', matters: true },
+      { name: 'at', value: settings.at, matters: true },
       ...floorRows(integrated.tones.floor, integrated.startM, request),
     ],
     request,

@@ -6,7 +6,7 @@ import { composerSchema } from '@/app/(desk)/compose/[id]/composer-schema';
 import { emptyNoise, emptyWaveform, fieldsFromSheet, sheetFromFields } from '@/app/(desk)/compose/[id]/fields';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 
-const specimens = ['spin-visible', 'precise-match', 'loudness', 'radiated-energy', 'two-to-one'];
+const specimens = ['spin-visible', 'precise-match', 'loudness', 'radiated-energy', 'two-to-one', 'ringdown-and-resolution'];
 const sheetOf = (name: string): DraftSheet => ({ noise: {}, ...(JSON.parse(readFileSync(`content/specimens/${name}/claim.json`, 'utf8')) as object) }) as DraftSheet;
 
 describe('the form and the sheet', () => {
