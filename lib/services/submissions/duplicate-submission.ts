@@ -5,6 +5,7 @@ import { storeFile } from '@/db/writes/files/store-file';
 import { createSubmission } from '@/db/writes/submissions/create-submission';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
+import { mayGenerally } from '@/lib/policy/grant';
 import { actGenerally, readSubmission } from '@/lib/services/act';
 import { NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { asDraftSheet } from './draft-sheet';
@@ -22,6 +23,9 @@ const LONGEST_TITLE = 300;
  * begin a submission. Co-authors, runs and threads stay where they are.
  */
 export async function duplicateSubmission(actor: Actor, submissionId: string, { revision }: z.infer<typeof duplicateInput>): Promise<Outcome<{ readonly id: string }>> {
+  // Asked first, so that somebody signed out is told so, and not that there is nothing here.
+  const right = mayGenerally('submission.create', actor);
+  if (!right.ok) return right;
   const source = await readSubmission({ actor, action: 'submission.view-draft', submissionId }, async ({ reader }) => {
     const { currentRevision } = await getSubmissionHead(reader, submissionId);
     const row = await findRevision(reader, submissionId, revision ?? currentRevision);
