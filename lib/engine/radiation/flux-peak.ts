@@ -26,11 +26,16 @@ interface Highest {
 function highest(values: Float64Array, from: number): Highest {
   let [at, top, low] = [from, -Infinity, Infinity];
   for (let i = from; i < values.length; i++) {
+    // A flux that is no number must not be passed over for the next largest.
+    if (Number.isNaN(values[i]!)) return { at: i, isFlat: false };
     if (values[i]! > top) [at, top] = [i, values[i]!];
     if (values[i]! < low) low = values[i]!;
   }
   return { at, isFlat: top - low <= FLAT * top };
 }
+
+/** Where the flux is no number, nothing is read around it. */
+const noPeak = (timeM: number): FluxPeak => ({ timeM, flux: Number.NaN, atEdge: null });
 
 /** Golden section: the largest value between two times around a maximum. */
 function climb(f: (t: number) => number, from: number, to: number): FluxPeak {
@@ -59,6 +64,7 @@ export function peakOnSamples(radiation: SampledRadiation, startM: number, order
   const start = Math.max(startM, axis[0]!);
   const first = axis.findIndex((t) => t >= start);
   const { at, isFlat } = highest(values, first);
+  if (!Number.isFinite(values[at]!)) return noPeak(axis[at]!);
   if (at === last || isFlat) return { timeM: axis[last]!, flux: values[last]!, atEdge: isFlat ? null : 'end' };
   const [from, to] = [Math.max(0, at - MARGIN), Math.min(axis.length, at + MARGIN + 1)];
   const near = { axis: axis.subarray(from, to), first: values.subarray(from, to), second: values.subarray(from, to) };
@@ -97,6 +103,7 @@ export function peakOnPanels(radiation: ContinuousRadiation, startM: number, axi
   [times[0], times[times.length - 1]] = [start, end];
   let values = fluxOf(radiation, times);
   const { at: top, isFlat } = highest(values, 0);
+  if (!Number.isFinite(values[top]!)) return noPeak(times[top]!);
   if (isFlat || top === times.length - 1) return { timeM: end, flux: values[values.length - 1]!, atEdge: isFlat ? null : 'end' };
   let at = top;
   for (let pass = 0; pass < PASSES; pass++) {

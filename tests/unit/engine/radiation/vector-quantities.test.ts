@@ -72,6 +72,12 @@ describe.each(all.map((quantity) => [quantity.id, quantity] as const))('%s', (_,
     }
   });
 
+  it.each([Number.NaN, 1e200])('gives no finite number where a sample is %d', (bad) => {
+    const broken = upper.map((m) => ({ ...m, re: m.re.map((x, i) => (i === 400 ? bad : x)) }));
+    const { points } = measureOf(quantity, only(...broken));
+    expect(points.some(({ value, expandedUncertainty }) => Number.isFinite(value) && Number.isFinite(expandedUncertainty))).toBe(false);
+  });
+
   it('asks when partners with m < 0 were made up', () => {
     expect(codes(quantity, { ...wave, negativeM: null })).toEqual(['engine/negative-m-assumed needs-answer']);
     expect(codes(quantity, wave)).toEqual([]);
@@ -100,6 +106,14 @@ describe('radiated angular momentum', () => {
     expect(point!.value!).toBeGreaterThan(0);
     const backwards = upper.map((m) => ({ ...m, im: m.im.map((y) => -y) }));
     expect(numberBy(radiatedAngularMomentum, 'A', only(...backwards))).toAgreeWith(-point!.value!, { relative: 1e-12 });
+  });
+
+  it.each(['news', 'psi4'] as const)('divides by the floor alike in frequency and in time where %s does not average to nothing', (variable) => {
+    const slow = { ...modeSet(axis, [modeFrom(axis, 2, 2, gaussian(0.01, 9, 0.02, 0)), modeFrom(axis, 3, 1, gaussian(0.01, 12, 0, 0))], variable), negativeM: 'given' as const };
+    for (const integrationFloor of [0.01, 0.06, 0.3]) {
+      const [a, b] = (['A', 'B'] as const).map((route) => numberBy(radiatedAngularMomentum, route, slow, { integrationFloor }));
+      expect(b! / a!).toAgreeWith(1, 1e-7);
+    }
   });
 
   it('lists the floor for news too, because the strain has to be integrated', () => {
