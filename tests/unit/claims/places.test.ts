@@ -28,7 +28,7 @@ describe('a setting that is a word or one named number', () => {
   ])('reads %j as it stands', (settings) => {
     const parsed = read({ settings });
     if (!parsed.ok) throw new Error(problems({ settings }));
-    expect(parsed.value.claims[0]!.settings).toEqual(settings);
+    expect(parsed.value.claims.map((claim) => claim.settings)).toEqual([settings]);
   });
 
   it.each([
@@ -51,7 +51,7 @@ describe('a sweep over a place', () => {
   it('goes over its named number', () => {
     const parsed = read({ over: { at: [{ timeM: 100 }, { timeM: 250.5 }] }, claimed: ['0.01', '0.02'] });
     if (!parsed.ok) throw new Error('refused');
-    expect(parsed.value.claims[0]!.over).toEqual({ setting: 'at', values: [100, 250.5] });
+    expect(parsed.value.claims.map((claim) => claim.over)).toEqual([{ setting: 'at', values: [100, 250.5] }]);
   });
   it.each([[['peak', 'end']], [[100, 200]], [[{ frequencyM: 0.1 }, { frequencyM: 0.2 }]]])('refuses %j', (values) => {
     expect(problems({ over: { at: values }, claimed: ['0.01', '0.02'] })).toContain('expected {"timeM": number} in each entry');
