@@ -35,6 +35,8 @@ function follow(tone: Tone, stencil: number): Followed {
 
 const FEWEST = 64;
 const MOST = 8000;
+/** The cost is smooth in the shift: so many points find the right valley, all of them its floor. */
+const MOST_IN_SEARCH = 1000;
 /** Lags tried before the best is refined: a sixteenth of the window apart, within bounds. */
 const LAGS = { aWindow: 16, fewest: 40, most: 600 } as const;
 
@@ -45,9 +47,9 @@ interface WindowGrid {
   readonly weights: Float64Array;
 }
 
-function gridOf({ axis }: Followed, [from, to]: readonly [number, number], { quadrature, density }: PairNumerics): WindowGrid {
+function gridOf({ axis }: Followed, [from, to]: readonly [number, number], { quadrature, density }: PairNumerics, most = MOST): WindowGrid {
   const inside = axis.filter((t) => t > from && t < to).length;
-  const n = Math.min(MOST, Math.max(FEWEST, density * (inside + 1))) + 1;
+  const n = Math.min(most, Math.max(FEWEST, density * (inside + 1))) + 1;
   const dt = (to - from) / (n - 1);
   const times = Float64Array.from({ length: n }, (_, i) => from + i * dt);
   return { t0: from, dt, n, weights: quadratureWeights(times, from, quadrature, true).map((w) => w / (to - from)) };
@@ -71,16 +73,19 @@ function costAt(a: Float64Array, b: Followed, grid: WindowGrid, shift: number, o
 }
 
 function bestShift(a: Followed, b: Followed, numerics: PairNumerics, window: readonly [number, number], low: number, high: number): { shift: number; degenerate: boolean } {
-  const grid = gridOf(a, window, numerics);
-  const [phaseA] = interpolatePair({ axis: a.axis, first: a.phase, second: a.phase }, grid, numerics.interpolation);
-  const cost = (shift: number) => costAt(phaseA, b, grid, Math.min(Math.max(shift, low), high), numerics.interpolation);
+  const costOn = (grid: WindowGrid) => {
+    const [phaseA] = interpolatePair({ axis: a.axis, first: a.phase, second: a.phase }, grid, numerics.interpolation);
+    return (shift: number) => costAt(phaseA, b, grid, Math.min(Math.max(shift, low), high), numerics.interpolation);
+  };
+  const rough = costOn(gridOf(a, window, numerics, MOST_IN_SEARCH));
+  const cost = costOn(gridOf(a, window, numerics));
   const length = window[1] - window[0];
   const lags = Math.min(LAGS.most, Math.max(LAGS.fewest, Math.ceil(((high - low) / length) * LAGS.aWindow)));
   const step = (high - low) / lags;
   const zero = Math.min(Math.max(0, low), high);
-  let [best, least] = [zero, cost(zero).variance];
+  let [best, least] = [zero, rough(zero).variance];
   for (let i = 0; i <= lags; i++) {
-    const here = cost(low + i * step).variance;
+    const here = rough(low + i * step).variance;
     if (here < least) [best, least] = [low + i * step, here];
   }
   if (Math.sqrt(cost(best).spread) * length < FLAT_RAD) return { shift: zero, degenerate: true };

@@ -5,7 +5,7 @@ import { within, type Tone } from '../tones/tone';
 import { FLAT_RAD, type PairRoute } from './alignment';
 
 const NODES_A_PANEL = 8;
-const PANELS = { fewest: 12, most: 500, samples: 3 } as const;
+const PANELS = { fewest: 12, most: 500, mostInSearch: 200, samples: 3 } as const;
 /** Lags tried before Newton's method: another spacing than route A's. */
 const LAGS = { aWindow: 11, fewest: 30, most: 400 } as const;
 const NEWTON_STEPS = 40;
@@ -28,9 +28,9 @@ interface Nodes {
   readonly w: Float64Array;
 }
 
-function windowNodes({ axis }: Tone, [from, to]: readonly [number, number]): Nodes {
+function windowNodes({ axis }: Tone, [from, to]: readonly [number, number], most: number = PANELS.most): Nodes {
   const inside = axis.filter((t) => t > from && t < to).length;
-  const panels = Math.min(PANELS.most, Math.max(PANELS.fewest, Math.ceil(inside / PANELS.samples)));
+  const panels = Math.min(most, Math.max(PANELS.fewest, Math.ceil(inside / PANELS.samples)));
   const rule = gaussRule(NODES_A_PANEL);
   const half = (to - from) / panels / 2;
   const t = new Float64Array(panels * NODES_A_PANEL);
@@ -84,14 +84,16 @@ function costAt(a: Splined, b: Splined, { t, w }: Nodes, shift: number): { reado
 
 function bestShift(a: Splined, b: Splined, window: readonly [number, number], low: number, high: number): { shift: number; degenerate: boolean } {
   const nodes = windowNodes(a.tone, window);
+  const fewer = windowNodes(a.tone, window, PANELS.mostInSearch);
+  const rough = (shift: number): number => costAt(a, b, fewer, shift).variance;
   const cost = (shift: number) => costAt(a, b, nodes, shift);
   const length = window[1] - window[0];
   const lags = Math.min(LAGS.most, Math.max(LAGS.fewest, Math.ceil(((high - low) / length) * LAGS.aWindow)));
   const zero = Math.min(Math.max(0, low), high);
-  let [shift, least] = [zero, cost(zero).variance];
+  let [shift, least] = [zero, rough(zero)];
   for (let i = 0; i <= lags; i++) {
     const at = low + ((high - low) * i) / lags;
-    const here = cost(at).variance;
+    const here = rough(at);
     if (here < least) [shift, least] = [at, here];
   }
   if (Math.sqrt(cost(shift).spread) * length < FLAT_RAD) return { shift: zero, degenerate: true };

@@ -21,6 +21,17 @@ function barycentricWeights(axis: Float64Array, from: number, order: number, out
   }
 }
 
+/** Index of the last axis point at or before t, kept within the axis's intervals: a grid may begin far into a long record. */
+function intervalOf(axis: Float64Array, t: number): number {
+  let [low, high] = [0, Math.max(0, axis.length - 2)];
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    if (axis[middle]! <= t) low = middle;
+    else high = middle - 1;
+  }
+  return low;
+}
+
 /**
  * Local Lagrange interpolation of two series onto a uniform grid.
  * Shape:  axis strictly rising with at least two points; the grid lies within it; two arrays of grid.n come back.
@@ -37,7 +48,7 @@ export function interpolatePair(pair: SeriesPair, grid: UniformGrid, wantedOrder
   const outFirst = new Float64Array(grid.n);
   const outSecond = new Float64Array(grid.n);
   const weights = new Float64Array(order);
-  let i = 0;
+  let i = intervalOf(axis, grid.t0);
   let stencil = -1;
   for (let k = 0; k < grid.n; k++) {
     const t = grid.t0 + k * grid.dt;

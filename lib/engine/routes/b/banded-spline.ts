@@ -167,6 +167,17 @@ export function antiderivativeOf(spline: Spline): Spline {
   return { basis: { ...spline.basis, degree: degree + 1, knots: wider, n: n + 1 }, coefficients: c };
 }
 
+/** First span whose upper knot lies above x: points may begin far into a long axis. */
+function spanOf(knots: Float64Array, from: number, last: number, x: number): number {
+  let [low, high] = [from, last];
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if (knots[middle + 1]! > x) high = middle;
+    else low = middle + 1;
+  }
+  return low;
+}
+
 /**
  * Values of splines that share a basis at ascending points inside the axis.
  * Shape:  one row of `points.length` a spline.
@@ -181,7 +192,7 @@ export function evaluateSplines(splines: readonly Spline[], points: Float64Array
   if (basis === undefined) return rows;
   const { degree, knots, n } = basis;
   const values = new Float64Array(degree + 1);
-  let span = degree;
+  let span = points.length === 0 ? degree : spanOf(knots, degree, n - 1, points[0]!);
   for (let p = 0; p < points.length; p++) {
     span = spanFrom(knots, n - 1, span, points[p]!);
     basisAt(knots, degree, span, points[p]!, values);
