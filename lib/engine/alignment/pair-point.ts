@@ -69,6 +69,18 @@ function sideOf(waveform: Waveform, record: RadiationRecord, mode: ModeIndex, de
   return { waveform, tones, startM, mirrored: mode[1] < 0 && completeModes(waveform).mirrorAssumed };
 }
 
+/** The shift does not depend on where the difference is read: a sweep over times looks for it once. */
+function remembering(route: PairRoute): PairRoute {
+  const shifts = new Map<string, ReturnType<PairRoute['bestShift']>>();
+  const bestShift: PairRoute['bestShift'] = (window, low, high) => {
+    const key = [...window, low, high].join();
+    const found = shifts.get(key) ?? route.bestShift(window, low, high);
+    shifts.set(key, found);
+    return found;
+  };
+  return { ...route, bestShift };
+}
+
 const once = <T>(make: () => T): (() => T) => {
   let made: { readonly value: T } | null = null;
   return () => (made ??= { value: make() }).value;
@@ -99,9 +111,9 @@ export function pairPreparer(request: MeasureRequest): (at: At) => PairPoint | F
   if ('code' in a) return refuse(a);
   if ('code' in b) return refuse(b);
   const routes: PairRoutes = {
-    A: once(() => pairOnSamples(a.tones.A, b.tones.A, housePair)),
-    coarse: once(() => pairOnSamples(a.tones.A, b.tones.A, coarserPair)),
-    B: once(() => pairOnSplines(a.tones.B, b.tones.B)),
+    A: once(() => remembering(pairOnSamples(a.tones.A, b.tones.A, housePair))),
+    coarse: once(() => remembering(pairOnSamples(a.tones.A, b.tones.A, coarserPair))),
+    B: once(() => remembering(pairOnSplines(a.tones.B, b.tones.B))),
   };
   const settingsAt = (at: ReadAt): AlignmentSettings => ({ alignment: declared.alignment ?? houseValues.alignment, window: declared.window ?? null, at });
   return (swept) => ({ a, b, mode: sighted ? null : mode, severalModes: recordA.modes.length > 1, routes, settings: settingsAt(swept.at === undefined ? (declared.at ?? houseValues.at) : { timeM: swept.at }) });
