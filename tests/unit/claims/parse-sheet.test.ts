@@ -74,7 +74,7 @@ describe('a bad sheet is refused with every problem, its place, what was seen an
     ['another format', { ...good(), format: 'counterfoil-claim/2' }, '/format: saw "counterfoil-claim/2"; expected "counterfoil-claim/1".'],
     ['no claims', { ...good(), claims: [] }, '/claims: saw []; expected at least one claim.'],
     ['a misspelt name', { ...good(), titel: 'x' }, '/titel: saw the unknown name "titel"; expected one of format, title, statement, waveforms, noise, claims. Did you mean "title"?'],
-    ['something else than an object', [1], ': saw [1]; expected a claim sheet'],
+    ['something else than an object', [1], 'saw [1]; expected a claim sheet'],
     ['a misspelt quantity', withClaim(match({ quantity: 'missmatch' })), '/claims/0/quantity: saw the unknown quantity "missmatch"'],
     ['a quantity that is not built yet', withClaim(match({ quantity: 'recoil' })), '/claims/0/quantity: saw the quantity "recoil"; expected a quantity that this version computes (match, overlap, snr, radiated-energy). "recoil" belongs to the format, but is not computed yet.'],
     ['a misspelt setting', withClaim(match({ settings: { totalMassMsun: 60, fLowHertz: 20 } })), '/claims/0/settings/fLowHertz: saw the unknown name "fLowHertz"'],

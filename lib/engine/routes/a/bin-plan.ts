@@ -73,6 +73,11 @@ const doublingsTo = (lag: number, wanted: number): number =>
 /**
  * Spacing of the bins. It does not depend on the mass unless the noise asks for finer bins, and
  * then only in powers of two, so that one transform serves many masses.
+ * Shape:  one plan for all sides of the request.
+ * Units:  `dF` in 1/(unit of time of the first side's file).
+ * Error:  none of its own; the doublings say how fine the bins are, and how much finer they could be.
+ * Fails:  never; beyond the longest transform the doublings stop and say so.
+ * Source: a band-limited product over a finite lag is summed exactly by bins of 1/(2·lag), the sampling theorem.
  */
 export function spacing(request: PrepareRequest, store: SpectrumStore, numerics: Numerics, extra: number): Spacing {
   const perUnit = request.sides[0]!.secondsPerUnit;
