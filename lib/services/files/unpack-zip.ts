@@ -10,6 +10,9 @@ import { MAX_FILE_BYTES, MAX_FILES, type Incoming } from './stage-file';
 
 configure({ useWebWorkers: false });
 
+/** Folders among them: a directory of many lines costs memory, whatever its lines are. */
+const MAX_ENTRIES = 1000;
+
 export const isZip = (name: string): boolean => name.toLowerCase().endsWith('.zip');
 
 const refuse = (sentence: string): never => {
@@ -38,9 +41,10 @@ export async function unpackZip(archive: Readable, take: (entry: Incoming) => Pr
 
 async function entriesOf(reader: ZipReader<Blob>): Promise<readonly FileEntry[]> {
   const entries: FileEntry[] = [];
-  let bytes = 0;
+  let [seen, bytes] = [0, 0];
   try {
     for await (const entry of reader.getEntriesGenerator()) {
+      if (++seen > MAX_ENTRIES) refuse(`The archive lists more than ${MAX_ENTRIES} files and folders. Pack the files alone.`);
       if (entry.directory) continue;
       if (entry.encrypted) refuse(`${entry.filename} in the archive is encrypted. Pack it without a password.`);
       bytes += entry.uncompressedSize;
