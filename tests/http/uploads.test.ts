@@ -2,8 +2,11 @@ import { createHash, randomBytes } from 'node:crypto';
 import { Readable } from 'node:stream';
 import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest';
 import { BlobWriter, TextReader, ZipWriter } from '@zip.js/zip.js';
+import { ListObjectsV2Command, S3Client } from '@aws-sdk/client-s3';
 import { ok } from '@/lib/kernel/result';
 import { VISITOR, type Actor, type SignedInActor } from '@/lib/policy/actor';
+import { discardStaged } from '@/lib/services/files/stage-file';
+import { fileStore } from '@/lib/services/files/file-store';
 import { getDraft } from '@/lib/services/submissions/get-draft';
 import type { FileView } from '@/lib/services/submissions/submission-view';
 import { POST as createSubmission } from '@/app/api/v1/submissions/route';
@@ -146,5 +149,53 @@ describe('a claim-sheet folder', () => {
     expect((await create(multipart({ name: '../x', chunks: [Buffer.from('x')] }, { field: 'claim', name: 'claim.json', chunks: [Buffer.from(claim)] }))).status).toBe(422);
     expect((await create(multipart({ name: 'broken.zip', chunks: [Buffer.from('PK nothing')] }))).status).toBe(422);
     expect(await desk.sql('select (select count(*)::int from submissions) s, (select count(*)::int from stored_files) f')).toEqual(before);
+  });
+});
+
+describe('the store', () => {
+  /** Every object but those of other tests of this file, which are all older. */
+  async function keys(): Promise<string[]> {
+    const { S3_ENDPOINT: endpoint, S3_BUCKET: Bucket, S3_ACCESS_KEY_ID: accessKeyId, S3_SECRET_ACCESS_KEY: secretAccessKey } = desk.store.env;
+    const client = new S3Client({ endpoint, region: 'us-east-1', forcePathStyle: true, credentials: { accessKeyId, secretAccessKey } });
+    const { Contents = [] } = await client.send(new ListObjectsV2Command({ Bucket, Prefix: 'uploads/' }));
+    client.destroy();
+    return Contents.map((object) => object.Key ?? '').sort();
+  }
+
+  it('keeps one object of two equal files that came at once, for a draft and for a new folder', async () => {
+    const before = await keys();
+    const twins = (bytes: Buffer) => [{ name: 'one.txt', chunks: [bytes] }, { name: 'other.txt', chunks: [bytes] }];
+    expect((await send(multipart(...twins(randomBytes(500))), upload)).status).toBe(201);
+    expect((await keys()).length).toBe(before.length + 1);
+    expect((await send(multipart(...twins(randomBytes(500)), { field: 'claim', name: 'claim.json', chunks: [Buffer.from(JSON.stringify(burstSheet()))] }), createSubmission)).status).toBe(201);
+    expect((await keys()).length).toBe(before.length + 2);
+  });
+
+  it('never loses an object that a row points at, also where two rows keep equal bytes under two keys', async () => {
+    const bytes = randomBytes(300);
+    const sha256 = hashOf([bytes]);
+    const pair = [await draftWithBursts(author), await draftWithBursts(author)];
+    // As two requests leave it that staged the same bytes before either was recorded.
+    for (const [i, id] of pair.entries()) {
+      await fileStore().put(`uploads/twin-${i}`, Readable.from(bytes));
+      await desk.sql('insert into stored_files (submission_id, sha256, bytes, storage_key, original_name, uploaded_by) values ($1, $2, 300, $3, $4, $5)', id, sha256, `uploads/twin-${i}`, 'twin.txt', author.userId);
+    }
+    for (const i of [0, 1]) await discardStaged([{ name: 'third.txt', sha256, bytes: 300, storageKey: `uploads/twin-${i}` }]);
+    for (const i of [0, 1]) expect(await fileStore().head(`uploads/twin-${i}`)).toEqual({ bytes: 300 });
+  });
+});
+
+describe('an archive', () => {
+  it('of more than a thousand folders is refused, however few its files; some folders are not', async () => {
+    const zipOf = async (folders: number) => {
+      const zip = new ZipWriter(new BlobWriter());
+      await zip.add('claim.json', new TextReader(JSON.stringify(burstSheet())));
+      for (let i = 0; i < folders; i++) await zip.add(`empty/${i}/`, undefined, { directory: true });
+      return Buffer.from(await (await zip.close()).arrayBuffer());
+    };
+    const sendZip = async (folders: number) => send(multipart({ name: 'folders.zip', chunks: [await zipOf(folders)] }), createSubmission);
+    expect((await sendZip(100)).status).toBe(201);
+    const answer = await sendZip(1000);
+    expect([answer.status, ((await answer.json()) as { detail: string }).detail]).toEqual([422, 'The archive lists more than 1000 files and folders. Pack the files alone.']);
   });
 });

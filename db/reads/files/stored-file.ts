@@ -9,6 +9,12 @@ export async function findStorageKey(reader: Reader, sha256: string): Promise<st
   return row?.key;
 }
 
+/** Whether any row points at this object. A row and its object have one digest, which is what the index knows. */
+export async function isStored(reader: Reader, object: { readonly sha256: string; readonly storageKey: string }): Promise<boolean> {
+  const rows = await reader.select({ id: storedFiles.id }).from(storedFiles).where(and(eq(storedFiles.sha256, object.sha256), eq(storedFiles.storageKey, object.storageKey))).limit(1);
+  return rows.length > 0;
+}
+
 /** Bytes that this submission already holds, whatever name they had. */
 export async function findStoredFile(reader: Reader, submissionId: string, by: { readonly fileId: string } | { readonly sha256: string }) {
   const is = 'fileId' in by ? eq(storedFiles.id, by.fileId) : eq(storedFiles.sha256, by.sha256);

@@ -2,7 +2,7 @@ import { randomUUID } from 'node:crypto';
 import { Transform, type Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import { database } from '@/db/client';
-import { findStorageKey } from '@/db/reads/files/stored-file';
+import { findStorageKey, isStored } from '@/db/reads/files/stored-file';
 import type { UploadedFile } from '@/db/writes/files/store-file';
 import { pathFault } from '@/lib/claims/file-path';
 import { ok } from '@/lib/kernel/result';
@@ -62,10 +62,7 @@ async function sharing(file: UploadedFile): Promise<UploadedFile> {
   return { ...file, storageKey: there };
 }
 
-/** Lets go of bytes that no row came to point at. Keys shared with older rows are left alone. */
+/** Lets go of bytes that no row came to point at, because nothing was recorded or an equal file was there first. */
 export async function discardStaged(files: readonly UploadedFile[]): Promise<void> {
-  for (const file of files) {
-    const used = await findStorageKey(database(), file.sha256);
-    if (used !== file.storageKey) await fileStore().remove(file.storageKey);
-  }
+  for (const file of files) if (!(await isStored(database(), file))) await fileStore().remove(file.storageKey);
 }

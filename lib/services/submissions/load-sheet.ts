@@ -50,7 +50,7 @@ export async function createFromFolder(actor: Actor, folder: Folder): Promise<Ou
     if (!(cause instanceof AppFailure)) throw cause;
     made = { ok: false, error: cause.error };
   } finally {
-    if (!made?.ok) await discardStaged(staged);
+    await discardStaged(staged);
   }
   return made;
 }
