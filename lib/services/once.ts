@@ -16,9 +16,12 @@ export interface OnceKey {
   readonly answer: (value: unknown) => { readonly status: number; readonly body: unknown };
 }
 
-const current = new AsyncLocalStorage<OnceKey>();
+const current = new AsyncLocalStorage<OnceKey | null>();
 
 export const underKey = <T>(key: OnceKey, work: () => Promise<T>): Promise<T> => current.run(key, work);
+
+/** For an act that only clears up after a refusal: what it answers is not the answer to the request. */
+export const withoutKey = <T>(work: () => Promise<T>): Promise<T> => current.run(null, work);
 
 export async function recordAnswerOnce(tx: Transaction, value: unknown): Promise<void> {
   const key = current.getStore();

@@ -15,6 +15,11 @@ export interface AnnouncedFile {
 /** Long enough for a weekend without a connection. */
 const kept = sql`now() + interval '3 days'`;
 
+/** One person's announcements one after the other, also to several submissions, so that their sum can be trusted. */
+export async function queueAnnouncements(tx: Transaction, grant: MayUpload): Promise<void> {
+  await tx.execute(sql`select pg_advisory_xact_lock(hashtext(${`uploads of ${userIdOf(grant.actor) ?? ''}`}))`);
+}
+
 export async function openUpload(tx: Transaction, grant: MayUpload, file: AnnouncedFile): Promise<string> {
   const userId = userIdOf(grant.actor);
   if (userId === null) throw new Error('an upload needs somebody who sends it');

@@ -22,18 +22,19 @@ export async function addFile(actor: Actor, submissionId: string, incoming: Inco
   const staged = await stageFile(incoming);
   if (!staged.ok) return staged;
   const recorded = await recordFile(actor, submissionId, staged.value);
-  if (!recorded.ok) await discardStaged([staged.value]);
+  await discardStaged([staged.value]);
   return recorded;
 }
 
-/** The answer to an upload before a byte of it is read. */
-export async function mayAdd(actor: Actor, submissionId: string, name: string): Promise<Outcome<null>> {
+/** The answer to an upload before a byte of it is read. With no name known yet, whether there is room is asked later: the file may replace another. */
+export async function mayAdd(actor: Actor, submissionId: string, name: string | null): Promise<Outcome<null>> {
   const facts = await findSubmissionFacts(database(), actor, submissionId);
   const grant = may('submission.edit', actor, facts);
   if (!grant.ok) return grant;
   if (facts?.currentLodged) return fail('conflict', LODGED_ALREADY);
   const row = await currentRevision(database(), submissionId);
-  return row ? roomFor(database(), row, name) : { ok: false, error: NOT_FOUND };
+  if (!row) return { ok: false, error: NOT_FOUND };
+  return name === null ? ok(null) : roomFor(database(), row, name);
 }
 
 export async function roomFor(reader: Reader, row: RevisionRow, name: string): Promise<Outcome<null>> {
@@ -44,8 +45,8 @@ export async function roomFor(reader: Reader, row: RevisionRow, name: string): P
   return ok(null);
 }
 
-/** `also` is written in the same transaction. */
-export const recordFile = (actor: Actor, submissionId: string, file: UploadedFile, also: (tx: Transaction, grant: SubmissionGrant<'submission.edit'>) => Promise<void> = async () => undefined): Promise<Outcome<FileView>> =>
+/** `also` is written in the same transaction, and its refusal undoes all of it. */
+export const recordFile = (actor: Actor, submissionId: string, file: UploadedFile, also: (tx: Transaction, grant: SubmissionGrant<'submission.edit'>) => Promise<Outcome<null>> = async () => ok(null)): Promise<Outcome<FileView>> =>
   actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
     const row = await currentRevision(tx, submissionId);
@@ -53,7 +54,8 @@ export const recordFile = (actor: Actor, submissionId: string, file: UploadedFil
     const room = await roomFor(tx, row, file.name);
     if (!room.ok) return room;
     const { id } = await storeFile(tx, grant, { submissionId, revisionId: row.id }, file);
-    await also(tx, grant);
+    const more = await also(tx, grant);
+    if (!more.ok) return more;
     note({ file: file.name, sha256: file.sha256, bytes: file.bytes });
     return ok({ id, name: file.name, bytes: file.bytes, sha256: file.sha256 });
   });

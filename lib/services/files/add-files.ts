@@ -13,7 +13,7 @@ export type EachFile = (take: (file: Incoming) => Promise<void>) => Promise<void
 
 /** The files of one request into a draft, all or none: what was told once is one act. */
 export async function addFiles(actor: Actor, submissionId: string, eachFile: EachFile): Promise<Outcome<readonly FileView[]>> {
-  const open = await mayAdd(actor, submissionId, '');
+  const open = await mayAdd(actor, submissionId, null);
   if (!open.ok) return open;
   const staged: UploadedFile[] = [];
   let added: Outcome<readonly FileView[]> | null = null;
@@ -24,7 +24,7 @@ export async function addFiles(actor: Actor, submissionId: string, eachFile: Eac
     if (!(cause instanceof AppFailure)) throw cause;
     added = { ok: false, error: cause.error };
   } finally {
-    if (!added?.ok) await discardStaged(staged);
+    await discardStaged(staged);
   }
   return added;
 }

@@ -1,8 +1,9 @@
 import type { Transaction } from '@/db/client';
 import { findStoredFile } from '@/db/reads/files/stored-file';
-import { listUploadParts, listUploads } from '@/db/reads/files/uploads';
+import { findUploadNamed, listUploadParts } from '@/db/reads/files/uploads';
+import type { RevisionRow } from '@/db/reads/submissions/revision';
 import { storeFile } from '@/db/writes/files/store-file';
-import { dropUpload, keepUploadLonger, openUpload, type AnnouncedFile } from '@/db/writes/files/uploads';
+import { dropUpload, keepUploadLonger, openUpload, queueAnnouncements, type AnnouncedFile } from '@/db/writes/files/uploads';
 import { pathFault } from '@/lib/claims/file-path';
 import { ok } from '@/lib/kernel/result';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
@@ -13,6 +14,7 @@ import type { FileView } from '@/lib/services/submissions/submission-view';
 import { LODGED_ALREADY } from '@/lib/services/submissions/update-draft';
 import { currentRevision, roomFor } from './add-file';
 import { fileStore } from './file-store';
+import { roomForUpload } from './upload-room';
 import { PART_BYTES, type UploadView } from './upload-view';
 
 /** Either the bytes are here already, under whatever name, or this is what is still wanted. */
@@ -36,22 +38,33 @@ export async function beginUpload(actor: Actor, submissionId: string, file: Anno
       return ok({ file: { id, name: file.name, bytes: here.bytes, sha256: here.sha256 }, upload: null });
     }
     note({ uploadBegun: file.name, bytes: file.bytes });
-    return ok({ file: null, upload: await goOn(tx, grant, file, replaced) });
+    const upload = await goOn(tx, grant, { row, file, replaced });
+    return upload.ok ? ok({ file: null, upload: upload.value }) : upload;
   });
   if (begun.ok) for (const key of replaced) await fileStore().remove(key);
   return begun;
 }
 
-async function goOn(tx: Transaction, grant: SubmissionGrant<'submission.edit'>, file: AnnouncedFile, replaced: string[]): Promise<UploadView> {
-  const same = (await listUploads(tx, grant.submissionId, userIdOf(grant.actor) ?? '')).find((upload) => upload.name === file.name);
+interface Announced {
+  readonly row: RevisionRow;
+  readonly file: AnnouncedFile;
+  /** Keys of parts that are not wanted any more, for whoever sees the transaction through. */
+  readonly replaced: string[];
+}
+
+async function goOn(tx: Transaction, grant: SubmissionGrant<'submission.edit'>, { row, file, replaced }: Announced): Promise<Outcome<UploadView>> {
+  await queueAnnouncements(tx, grant);
+  const same = await findUploadNamed(tx, grant.submissionId, userIdOf(grant.actor) ?? '', file.name);
   const parts = same ? await listUploadParts(tx, same.id) : [];
-  if (same && same.sha256 === file.sha256 && same.bytes === file.bytes) {
+  // One whose time is over may be losing its parts to the worker at this moment.
+  if (same && !same.over && same.sha256 === file.sha256 && same.bytes === file.bytes) {
     await keepUploadLonger(tx, grant, same.id);
-    return { id: same.id, ...file, partBytes: PART_BYTES, arrived: parts.map(({ number }) => number) };
+    return ok({ id: same.id, ...file, partBytes: PART_BYTES, arrived: parts.map(({ number }) => number) });
   }
   if (same) {
     replaced.push(...parts.map(({ storageKey }) => storageKey));
     await dropUpload(tx, grant, same.id);
   }
-  return { id: await openUpload(tx, grant, file), ...file, partBytes: PART_BYTES, arrived: [] };
+  const room = await roomForUpload(tx, grant, row, file);
+  return room.ok ? ok({ id: await openUpload(tx, grant, file), ...file, partBytes: PART_BYTES, arrived: [] }) : room;
 }

@@ -17,7 +17,7 @@ export const UPLOAD_GONE = fail('not-found', 'This upload is over, or was let go
 
 /** One part into the store. It counts only when it has come in full. */
 export async function takePart(actor: Actor, submissionId: string, at: { readonly uploadId: string; readonly number: number }, stream: Readable): Promise<Outcome<{ readonly number: number }>> {
-  const open = await mayAdd(actor, submissionId, '');
+  const open = await mayAdd(actor, submissionId, null);
   const upload = open.ok ? await findUpload(database(), submissionId, userIdOf(actor) ?? '', at.uploadId) : undefined;
   if (!open.ok || !upload || at.number >= partsOf(upload.bytes)) {
     stream.resume();
