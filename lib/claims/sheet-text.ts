@@ -1,8 +1,10 @@
+import { findUnkeepable } from '@/lib/kernel/plain-text';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import { describe } from './pointer';
 
-const maxBytes = 4 * 2 ** 20;
+export const maxSheetBytes = 4 * 2 ** 20;
+const maxBytes = maxSheetBytes;
 const maxDepth = 64;
 
 /** Bytes of `claim.json` to a JSON value; a name given twice is refused, since only one of the two would count. */
@@ -21,7 +23,9 @@ export function parseSheetText(bytes: Uint8Array): Result<unknown, Problem[]> {
     return refuse('claims/not-json', placeOf(thrown, text), 'JSON text', 'JSON takes no comments, no trailing commas and no NaN.');
   }
   const faults = nameFaults(text);
-  return faults.length > 0 ? err(faults) : ok(value);
+  if (faults.length > 0) return err(faults);
+  const unkeepable = findUnkeepable(value);
+  return unkeepable ? err([{ code: 'claims/bad-text', ...unkeepable, expected: 'text of whole characters' }]) : ok(value);
 }
 
 const refuse = (code: string, saw: string, expected: string, hint?: string): Result<never, Problem[]> =>

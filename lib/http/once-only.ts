@@ -32,7 +32,10 @@ export async function onceOnly<T>(once: OnceRequest, act: () => Promise<Result<T
   }
   const answer = (value: unknown) => ({ status: once.status, body: value ?? null });
   try {
-    return ok({ replayed: false, outcome: await underKey({ userId: once.userId, key: once.key, requestDigest: once.digest, answer }, act) });
+    const outcome = await underKey({ userId: once.userId, key: once.key, requestDigest: once.digest, answer }, act);
+    // The twin of this request may have been quicker, and ours came to what it had moved on.
+    const twin = outcome.ok ? undefined : await findKeptAnswer(database(), once.userId, once.key);
+    return twin ? replay(twin, once.digest()) : ok({ replayed: false, outcome });
   } catch (cause) {
     // The twin of this request was quicker: its transaction stood, ours was undone.
     const meanwhile = await findKeptAnswer(database(), once.userId, once.key);

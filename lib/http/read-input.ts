@@ -1,6 +1,7 @@
 import type { z } from 'zod';
 import type { Problem } from '@/lib/kernel/problem';
 import { describe, pointer } from '@/lib/claims/pointer';
+import { findUnkeepable } from '@/lib/kernel/plain-text';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import type { DoorError } from './problem-response';
 
@@ -8,6 +9,9 @@ import type { DoorError } from './problem-response';
 export const MAX_JSON_BYTES = 1024 * 1024;
 
 export function parseInput<T>(schema: z.ZodType<T>, raw: unknown): Result<T, DoorError> {
+  // Before any schema, for what text columns cannot keep is bad input wherever it stands.
+  const unkeepable = findUnkeepable(raw);
+  if (unkeepable) return err({ code: 'invalid', sentence: 'The input holds something that cannot be kept.', problems: [{ code: 'http/bad-text', ...unkeepable, expected: 'text of whole characters, without U+0000' }] });
   const parsed = schema.safeParse(raw);
   if (parsed.success) return ok(parsed.data);
   const problems = parsed.error.issues.map((issue) => asProblem(issue, raw));

@@ -1,4 +1,5 @@
-import { text } from 'node:stream/consumers';
+import type { Readable } from 'node:stream';
+import { maxSheetBytes } from '@/lib/claims/sheet-text';
 import type { Result } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { AppFailure } from '@/lib/services/app-error';
@@ -30,7 +31,7 @@ export function uploadFolder(actor: Actor, request: Request, parts?: UploadParts
       eachFile: async (take) => {
         const sort = async ({ field, name, stream }: UploadPart): Promise<void> => {
           if (isZip(name)) await unpackZip(stream, (entry) => sort({ field: '', ...entry }));
-          else if (isClaim(name, field)) claimJson = await text(stream);
+          else if (isClaim(name, field)) claimJson = await sheetText(stream);
           else await take({ name, stream });
         };
         const named = (name: string, value: string): void => {
@@ -41,6 +42,18 @@ export function uploadFolder(actor: Actor, request: Request, parts?: UploadParts
       },
     }),
   );
+}
+
+/** No further than a sheet may go: an archive can unfold to more than memory holds. */
+async function sheetText(stream: Readable): Promise<string> {
+  const chunks: Buffer[] = [];
+  let bytes = 0;
+  for await (const chunk of stream as AsyncIterable<Buffer>) {
+    bytes += chunk.byteLength;
+    if (bytes > maxSheetBytes) throw new BadUpload({ code: 'too-large', sentence: `The claim sheet is longer than ${maxSheetBytes} bytes, more than a sheet may have. Nothing was kept; send waveforms and curves as files of their own.` });
+    chunks.push(chunk);
+  }
+  return Buffer.concat(chunks).toString('utf8');
 }
 
 class BadUpload extends Error {

@@ -5,7 +5,7 @@ import { publishKey } from '@/db/writes/records/enter-record';
 import { signerEnv, type SignerEnv } from '@/lib/env';
 import { createS3Store } from '@/lib/storage/s3-store';
 import { endWithParent } from '@/lib/tools/process';
-import { signWaiting, type Signing } from './sign-decision';
+import { signWaiting, type Signing, type SigningFault } from './sign-decision';
 import { loadSigningKey, writePublicKey } from './signing-key';
 
 /** Told of a decision at once; looks by itself too, should a word be lost. */
@@ -14,7 +14,8 @@ const LOOK_EVERY_MS = 10_000;
 const say = (level: 'info' | 'error', message: string, more: object = {}): void =>
   (level === 'error' ? console.error : console.log)(JSON.stringify({ level, at: new Date().toISOString(), where: 'signer', message, ...more }));
 
-const tell = (done: Signing): void => {
+const tell = (done: Signing | SigningFault): void => {
+  if (done.outcome === 'broken') say('error', done.because, { decisionId: done.decisionId });
   if (done.outcome === 'signed') say('info', 'signed', { recordId: done.recordId });
   if (done.outcome === 'refused') say('info', 'refused', done.refusal);
 };

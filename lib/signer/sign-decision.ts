@@ -24,12 +24,21 @@ export interface SignerRoom {
 
 export type Signing = { readonly outcome: 'signed'; readonly recordId: string } | { readonly outcome: 'refused'; readonly refusal: SigningRefusal } | { readonly outcome: 'passed-over' };
 
-/** Every decision that waits, the oldest first. A fault (a store that is away) ends the round; the next one begins anew. */
-export async function signWaiting(room: SignerRoom): Promise<readonly Signing[]> {
-  const done: Signing[] = [];
-  for (const { id } of await listUnsigned(room.database)) done.push(await signDecision(room, id));
+/** A decision at which something broke; it waits for the next round, and holds up no other. */
+export interface SigningFault {
+  readonly outcome: 'broken';
+  readonly decisionId: string;
+  readonly because: string;
+}
+
+/** Every decision that waits, the oldest first. */
+export async function signWaiting(room: SignerRoom): Promise<readonly (Signing | SigningFault)[]> {
+  const done: (Signing | SigningFault)[] = [];
+  for (const { id } of await listUnsigned(room.database)) done.push(await signDecision(room, id).catch((cause: unknown) => broken(id, cause)));
   return done;
 }
+
+const broken = (decisionId: string, cause: unknown): SigningFault => ({ outcome: 'broken', decisionId, because: cause instanceof Error ? cause.message : String(cause) });
 
 export async function signDecision(room: SignerRoom, decisionId: string): Promise<Signing> {
   const facts = await findSigningFacts(room.database, decisionId);

@@ -1,10 +1,12 @@
 import { BlobWriter, TextReader, ZipWriter } from '@zip.js/zip.js';
 import { createHash, randomUUID } from 'node:crypto';
+import { Readable } from 'node:stream';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { OPERATIONS } from '@/lib/http/contract/operations';
 import { scopesOfDoor } from '@/lib/http/token-scope';
 import { DOORS } from '@/lib/policy/doors';
 import { REVIEW_DOORS } from '@/lib/policy/review-doors';
+import { addFile } from '@/lib/services/files/add-file';
 import { TOKEN_SCOPES } from '@/lib/policy/token-scopes';
 import { askDoor, bearer, contractOf, loadHandlers, session, signedIn, tokenFor, type Ask, type DoorName, type Person } from '../support/interface-desk';
 import { burstFiles, burstSheet } from '../support/burst-sheet';
@@ -223,9 +225,39 @@ describe('an entity tag', () => {
   });
 });
 
+describe('what a draft holds beside its version', () => {
+  it('is part of what lodging is held to: a file changed meanwhile is 412', async () => {
+    const id = await draftWithBursts(author.actor);
+    const etag = (await asAuthor('GET /api/v1/submissions/{id}', { params: { id } })).headers.get('etag') ?? '';
+    must(await addFile(author.actor, id, { name: 'notes.txt', stream: Readable.from('1 2\n') }));
+    const lodged = await asAuthor('POST /api/v1/submissions/{id}/lodge', { params: { id }, headers: { 'if-match': etag } });
+    expect([lodged.status, (await read<{ detail: string }>(lodged)).detail]).toEqual([412, expect.stringMatching(/or its files/)]);
+  });
+});
+
+describe('text that no database keeps', () => {
+  it('is refused with its place in any body, in a sheet and in a cursor, and is never a defect of ours', async () => {
+    const id = await draftWithBursts(author.actor);
+    for (const bad of ['a\u0000b', 'half \ud800 of a pair']) {
+      const answer = await asAuthor('PATCH /api/v1/submissions/{id}', { params: { id }, json: { version: 2, title: bad } });
+      expect([answer.status, (await read<{ problems: unknown[] }>(answer)).problems]).toEqual([422, [expect.objectContaining({ code: 'http/bad-text', where: '/title' })]]);
+    }
+    const deep = await asAuthor('PATCH /api/v1/submissions/{id}', { params: { id }, raw: `{"version":2,"sheet":${'['.repeat(5000)}${']'.repeat(5000)}}`, headers: { 'content-type': 'application/json' } });
+    expect(deep.status).toBe(422);
+    expect((await asAuthor('GET /api/v1/records', { search: '?cursor=AAAA' })).status).toBe(422);
+  });
+});
+
 describe('the same key', () => {
   const keyed = (door: DoorName, key: string, what: Ask): Promise<Response> => asAuthor(door, { ...what, headers: { ...what.headers, 'idempotency-key': key } });
   const count = async (table: string): Promise<number> => (await desk.sql<{ n: number }>(`select count(*)::int as n from ${table}`))[0]?.n ?? 0;
+
+  it('sent twice at once acts once, and the second gets the first answer', async () => {
+    const id = await draftWithBursts(author.actor);
+    const both = await Promise.all([0, 1].map(() => keyed('POST /api/v1/submissions/{id}/withdraw', `withdraw-${id}`, { params: { id }, json: { reason: 'Sent twice.' } })));
+    expect(both.map((answer) => answer.status)).toEqual([200, 200]);
+    expect(both.filter((answer) => answer.headers.has('idempotency-replayed'))).toHaveLength(1);
+  });
 
   it('gives an upload’s first answer again, whatever boundary the sender drew, and a conflict to another upload', async () => {
     const before = await count('submissions');

@@ -16,7 +16,8 @@ const LET_GO_AT_ONCE = 50;
 /** A second row under the same live key violates the primary key and undoes the second act with it. Takes no Grant: the act it belongs to had one. */
 export async function recordAnswer(tx: Transaction, answer: KeptAnswer): Promise<void> {
   await letGo(tx, answer);
-  await tx.insert(idempotencyKeys).values(answer);
+  // An answer of nothing is the JSON null, which is not the absence of a value.
+  await tx.insert(idempotencyKeys).values({ ...answer, body: sql`${JSON.stringify(answer.body ?? null)}::json` });
 }
 
 async function letGo(tx: Transaction, { userId, key }: KeptAnswer): Promise<void> {

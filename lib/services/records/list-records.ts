@@ -1,3 +1,4 @@
+import { isRecordId } from '@/lib/badges/record-id';
 import { database } from '@/db/client';
 import { isInRegister, listRegister, listRegisterChoices, type RegisterAsk } from '@/db/reads/records/register';
 import { ok } from '@/lib/kernel/result';
@@ -25,7 +26,7 @@ export async function pageRecords(actor: Actor, { limit, cursor }: PageAsk, aske
   const { query, problems } = parseRegisterQuery(asked, await listRegisterChoices(database()));
   if (problems.length > 0) return fail('invalid', 'A word of the search is not understood.', problems);
   const after = cursor === undefined ? undefined : idOfCursor(cursor);
-  if (cursor !== undefined && !(await isInRegister(database(), after ?? ''))) return noSuchPlace(cursor);
+  if (cursor !== undefined && !(isRecordId(after ?? '') && (await isInRegister(database(), after ?? '')))) return noSuchPlace(cursor);
   const rows = await listRegister(database(), query.ask, 'newest', { limit: limit + 1, after });
   const items = await viewRows(database(), rows.slice(0, limit));
   const last = items.at(-1);

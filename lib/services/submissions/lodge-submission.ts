@@ -11,7 +11,8 @@ import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
 import { beforeLodging, isCurrent } from './before-lodging';
 import { runRevision } from './run-draft';
-import { namesVersion, versionMoved } from './submission-tag';
+import { namesContent, versionMoved } from './submission-tag';
+import type { RevisionView } from './submission-view';
 import { LODGED_ALREADY } from './update-draft';
 import { viewRevision } from './view-parts';
 
@@ -22,8 +23,9 @@ export function lodgeSubmission(actor: Actor, submissionId: string, ifMatch: rea
     const { currentRevision } = await getSubmissionHead(tx, submissionId);
     const row = await findRevision(tx, submissionId, currentRevision);
     if (!row) return { ok: false, error: NOT_FOUND };
-    if (ifMatch && !namesVersion(ifMatch, row)) return fail('precondition', versionMoved(row));
-    const obstacles = await obstaclesOf(tx, row);
+    const revision = await viewRevision(tx, row);
+    if (ifMatch && !namesContent(ifMatch, revision)) return fail('precondition', versionMoved(row));
+    const obstacles = await obstaclesOf(tx, row, revision);
     if (obstacles.length > 0) return fail('precondition', `Not lodged. ${obstacles.join(' ')}`, obstacles.map(asProblem));
     const runId = await runRevision(tx, grant, row, 'official');
     const moved = (await freezeRevision(tx, grant, row.id)) && (await moveSubmission(tx, grant, { to: 'lodged' }));
@@ -33,8 +35,7 @@ export function lodgeSubmission(actor: Actor, submissionId: string, ifMatch: rea
   });
 }
 
-async function obstaclesOf(tx: Transaction, row: RevisionRow): Promise<readonly string[]> {
-  const revision = await viewRevision(tx, row);
+async function obstaclesOf(tx: Transaction, row: RevisionRow, revision: RevisionView): Promise<readonly string[]> {
   const found = await findLatestRun(tx, row.id, 'check');
   const authors = await listAuthors(tx, row.submissionId);
   return beforeLodging({
