@@ -153,7 +153,6 @@ describe('a claim-sheet folder', () => {
 });
 
 describe('the store', () => {
-  /** Every object but those of other tests of this file, which are all older. */
   async function keys(): Promise<string[]> {
     const { S3_ENDPOINT: endpoint, S3_BUCKET: Bucket, S3_ACCESS_KEY_ID: accessKeyId, S3_SECRET_ACCESS_KEY: secretAccessKey } = desk.store.env;
     const client = new S3Client({ endpoint, region: 'us-east-1', forcePathStyle: true, credentials: { accessKeyId, secretAccessKey } });
