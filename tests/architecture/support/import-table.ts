@@ -46,6 +46,7 @@ export const DOORS: readonly { readonly from: string; readonly to: string; reado
   { from: 'lib/worker/main', to: 'lib/tools/process', why: 'the manners of a supervised process are written once' },
   { from: 'lib/signer/main', to: 'lib/tools/process', why: 'the same' },
   { from: 'lib/http/read-input', to: 'lib/claims/pointer', why: 'one spelling of a JSON Pointer and of what was seen' },
+  { from: 'lib/http/upload-files', to: 'lib/claims/sheet-text', why: 'how long a sheet may be is said once, and a stream is ended there' },
   { from: 'lib/services/accounts/', to: 'lib/auth/', why: 'accounts are the one noun whose verbs the sign-in library half owns' },
 ];
 
