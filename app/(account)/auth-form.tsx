@@ -3,6 +3,7 @@ import { useState, type FormEvent, type ReactNode } from 'react';
 import { Button } from '../_ui/primitives/button';
 import { Notice } from '../_ui/primitives/notice';
 import { askAuth, type AuthPath } from './auth-requests';
+import { loadAnew } from './load-anew';
 
 interface AuthFormProps {
   readonly path: AuthPath;
@@ -31,10 +32,10 @@ export function AuthForm({ path, button, busy, extra, next, done, children }: Au
       setProblem(answer.sentence);
       setState('idle');
     } else if (answer.value['twoFactorRedirect']) {
-      window.location.assign(`/sign-in/second-factor?next=${encodeURIComponent(next ?? '/')}`);
+      loadAnew(`/sign-in/second-factor?next=${encodeURIComponent(next ?? '/')}`);
     } else if (next) {
       // A whole page load: what was fetched ahead was fetched for a visitor.
-      window.location.assign(next);
+      loadAnew(next);
     } else setState('done');
   };
   if (state === 'done') return <div role="status">{done}</div>;

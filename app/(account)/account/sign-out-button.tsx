@@ -3,6 +3,7 @@ import { useState } from 'react';
 import { Button } from '@/app/_ui/primitives/button';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { askAuth } from '../auth-requests';
+import { loadAnew } from '../load-anew';
 
 export function SignOutButton() {
   const [problem, setProblem] = useState<string | null>(null);
@@ -12,7 +13,7 @@ export function SignOutButton() {
     const answer = await askAuth('sign-out', {});
     if (answer.ok) {
       // A whole page load: what was fetched for a member must not linger.
-      window.location.assign('/');
+      loadAnew('/');
     } else {
       setProblem(answer.sentence);
       setBusy(false);

@@ -19,6 +19,8 @@ let id: string;
 const cutTone = (hz: number): string =>
   Array.from({ length: 4096 }, (_, i) => `${(i / 4096).toFixed(9)} ${(1e-21 * Math.cos((2 * Math.PI * hz * i) / 4096)).toExponential(12)}`).join('\n');
 
+const NOTHING = { code: '', where: '', text: '' };
+
 const asked = async (): Promise<Finding[]> => {
   const { check } = must(await getDraft(author, id));
   if (check?.run.state !== 'measured') throw new Error('the check gave no numbers');
@@ -45,16 +47,14 @@ describe('a finding that needs an answer', () => {
   });
 
   it('is not answered by a word on something that was not found, nor by nothing', async () => {
-    const [found] = await asked();
-    const { code, where, text } = found!;
+    const [{ code, where, text } = NOTHING] = await asked();
     expect(await answerFinding(author, id, { code, where, text: `${text} `, answer: 'It is meant.' })).toMatchObject({ ok: false, error: { code: 'conflict' } });
     must(await answerFinding(author, id, { code, where, text, answer: '' }));
     expect(must(await getDraft(author, id)).revision.answers).toEqual([]);
   });
 
   it('can be answered and taken back by authors alone', async () => {
-    const [found] = await asked();
-    const { code, where, text } = found!;
+    const [{ code, where, text } = NOTHING] = await asked();
     const other = await desk.person('S. Vasterling');
     expect(await answerFinding(other, id, { code, where, text, answer: 'It is meant.' })).toMatchObject({ ok: false, error: { code: 'not-found' } });
     must(await answerFinding(author, id, { code, where, text, answer: 'First words.' }));

@@ -43,7 +43,7 @@ describe('a first look', () => {
   });
 
   it('refuses a sheet with the place of each problem, as the run does', async () => {
-    const { result } = await look('spin-visible', (sheet) => (sheet.claims[0]!['quantity'] = 'brightness'));
+    const { result } = await look('spin-visible', (sheet) => Object.assign(sheet.claims[0] ?? {}, { quantity: 'brightness' }));
     expect(result.ok).toBe(false);
     if (!result.ok) expect(result.error[0]?.where).toContain('/claims/0/quantity');
   });

@@ -6,6 +6,7 @@ import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { askAuth } from '../../auth-requests';
 import { RecoveryCodes, codesIn } from './recovery-codes';
+import { loadAnew } from '../../load-anew';
 
 interface ManageProps {
   readonly hasPassword: boolean;
@@ -25,7 +26,7 @@ export function ManageFactor({ hasPassword, required }: ManageProps) {
         </Proven>
       </Disclosure>
       <Disclosure summary="Switch it off">
-        <Proven path="two-factor/disable" hasPassword={hasPassword} button="Switch the second factor off" busy="Switching it off" then={() => window.location.assign('/account/second-factor')}>
+        <Proven path="two-factor/disable" hasPassword={hasPassword} button="Switch the second factor off" busy="Switching it off" then={() => loadAnew('/account/second-factor')}>
           <p className="text-ui">{required ? 'Your account edits or administers: outside the demonstration it can only read until a second factor is set up again.' : 'From then on a password or ORCID alone signs you in.'}</p>
         </Proven>
       </Disclosure>
