@@ -1,5 +1,5 @@
 import type { Binary } from './binary';
-import type { TabulatedMode } from './quasi-normal';
+import type { TabulatedMode } from '../remnant/quasi-normal';
 
 /** Constant phase of each mode relative to e^{−imφ}, as (re, im). */
 export const modePhase: Record<TabulatedMode, readonly [number, number]> = {

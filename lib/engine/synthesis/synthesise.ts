@@ -3,8 +3,8 @@ import { modePhase, peakAmplitude22, relativeAmplitude, riseToPeak } from './amp
 import { binaryOf, type Binary, type BinaryParameters } from './binary';
 import { integrateInspiral, orbitalDecay } from './inspiral';
 import { amplitudePeak, mergerFrequency, type HandOver, type MergerFrequency } from './merger-frequency';
-import { fittedQuasiNormal, tabulatedQuasiNormal, type TabulatedMode } from './quasi-normal';
-import { remnantRadiatedEnergy, remnantSpin } from './remnant';
+import { fittedQuasiNormal, tabulatedQuasiNormal, type TabulatedMode } from '../remnant/quasi-normal';
+import { husaRadiatedEnergy, husaSpin } from '../remnant/husa-2016';
 
 export interface SynthesisRequest extends BinaryParameters {
   /** Orbital MΩ at the first sample. */
@@ -46,8 +46,8 @@ interface Inspiral extends HandOver {
 export function synthesise(request: SynthesisRequest): SyntheticWaveform {
   checkRequest(request);
   const binary = binaryOf(request);
-  const mass = 1 - remnantRadiatedEnergy(binary);
-  const spin = remnantSpin(binary);
+  const mass = 1 - husaRadiatedEnergy(binary);
+  const spin = husaSpin(binary);
   const inspiral = inspiralOf(binary, request);
   const tone = request.tones === 'table' ? tabulatedQuasiNormal : fittedQuasiNormal;
   const frequencies = (mode: TabulatedMode): MergerFrequency => {
