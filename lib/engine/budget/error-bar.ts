@@ -10,6 +10,7 @@ import { createRouteA } from '@/lib/engine/routes/a/route-a';
 import { houseNumerics, type Numerics } from '@/lib/engine/routes/a/numerics';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { withFewerDigits } from './reduce-digits';
+import { expandedOf } from './total';
 
 interface Knob {
   readonly name: string;
@@ -50,9 +51,7 @@ export interface ComputationError {
 
 const ROOT3 = Math.sqrt(3);
 
-/** U = 2 u_c with rectangular components (JCGM 100: u = half-width/√3). */
-export const expandedOf = (...halfWidths: readonly number[]): number => 2 * Math.sqrt(halfWidths.reduce((sum, h) => sum + (h * h) / 3, 0));
-
+/** Of a rectangle (JCGM 100: u = half-width/√3). */
 export const standardOf = (halfWidth: number): number => halfWidth / ROOT3;
 
 const roundedOnce = new WeakMap<Waveform, Map<number, Waveform>>();
@@ -96,5 +95,5 @@ export function computationError(recipe: Recipe, request: PointRequest, found: E
   quadrature = Math.max(quadrature, recipe.floor(found.value));
   const shorter = { ...request, a: printedShorter(request.a), b: request.b === null ? null : printedShorter(request.b) };
   const rounding = isPrinted(request) ? Math.abs(recipe.again(kitOf(houseNumerics, store), shorter, found) - base) / 10 : 0;
-  return { quadrature, rounding, largestKnob: largest.name, expanded: expandedOf(quadrature, rounding) };
+  return { quadrature, rounding, largestKnob: largest.name, expanded: expandedOf([standardOf(quadrature), standardOf(rounding)]) };
 }

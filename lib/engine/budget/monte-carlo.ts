@@ -70,6 +70,6 @@ export function monteCarloInterval(value: number, spreads: readonly Spread[], { 
   if (count < DRAWS) return null;
   const found = shortest(kept.sort());
   // A density that falls from a bound begins at the bound, whichever draw came closest to it.
-  const [first, last] = [found.low === kept[0] && low !== null, found.high === kept[DRAWS - 1] && high !== null];
-  return { low: first ? low : found.low, high: last ? high : found.high };
+  const [first, last] = [found.low === kept[0], found.high === kept[DRAWS - 1]];
+  return { low: first && low !== null ? low : found.low, high: last && high !== null ? high : found.high };
 }

@@ -1,3 +1,4 @@
+import { expandedOf } from '../budget/total';
 import type { BudgetLine } from '../contract/measurement';
 import type { PreparedPoint } from './prepare-radiated';
 import { house, type EllShare, type Outcome, type RadiationRecipe, type SampledStore, type Turned } from './radiation-recipe';
@@ -49,7 +50,7 @@ export function computationUncertainty({ recipe, point, store, digits }: Measuri
   };
 }
 
-export const combinedU = ({ quadrature, stencil, rounding }: ComputationUncertainty): number => 2 * Math.hypot(quadrature, stencil, rounding);
+export const combinedU = ({ quadrature, stencil, rounding }: ComputationUncertainty): number => expandedOf([quadrature, stencil, rounding]);
 
 type Elsewhere = (changed: Partial<RadiationSettings>) => number | null;
 

@@ -1,4 +1,5 @@
 import { routeBIndices, worstIndex } from '../budget/chosen-points';
+import { expandedOf } from '../budget/total';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Figure, MeasuredPoint, Measurement, UsedSetting } from '../contract/measurement';
 import { Cancelled, notComputable, type MeasureRequest, type Watch } from '../contract/quantity';
@@ -28,8 +29,6 @@ export interface ToneRecipe<P> {
   readonly figures: (point: P) => readonly Figure[];
   readonly tolerance: (claimed: number) => number;
 }
-
-const expandedOf = (lines: readonly BudgetLine[]): number => 2 * Math.hypot(...lines.map(({ u }) => u ?? Number.NaN));
 
 const unique = (findings: readonly Finding[]): Finding[] => findings.filter((f, i) => findings.findIndex((g) => g.text === f.text) === i);
 
@@ -82,7 +81,7 @@ export function measureTones<P extends object>(request: MeasureRequest, watch: W
     return recipe.computation(point, readings[i]!);
   });
   return {
-    points: readings.map(({ value, components }, i): MeasuredPoint => ({ at: ats[i]!, value, routes: { A: value, B: byB.get(i) ?? null }, expandedUncertainty: expandedOf(lines[i]!), components })),
+    points: readings.map(({ value, components }, i): MeasuredPoint => ({ at: ats[i]!, value, routes: { A: value, B: byB.get(i) ?? null }, expandedUncertainty: expandedOf(lines[i]!.map(({ u }) => u ?? Number.NaN)), components })),
     budget: [...lines[worst]!, ...recipe.coverage(ready[worst]!, readings[worst]!)],
     findings,
     ...recipe.settings(ready[worst]!),
