@@ -3,7 +3,7 @@ import { err, ok, type Result } from '@/lib/kernel/result';
 import { diagnoseLine, quote, type Separator } from './diagnose-line';
 import { NumberReader } from './number-reader';
 import { endOfLine, isComment, join, newline, skipBlanks, skipField } from './scan-bytes';
-import { LineNumbers, type NotFinite, type NumberTable } from './table';
+import { LineNumbers, type CommentLine, type NotFinite, type NumberTable } from './table';
 
 export interface TableLimits {
   readonly bytes: number;
@@ -17,6 +17,8 @@ export const tableLimits: TableLimits = { bytes: 512 * 2 ** 20, rows: 2 ** 21, c
 
 const reportedProblems = 10;
 const reportedNotFinite = 5;
+const keptComments = 200;
+const keptCommentBytes = 500;
 const blank = 0;
 const comma = 1;
 const semicolon = 2;
@@ -32,6 +34,7 @@ export class TableParser {
   private readonly lines = new LineNumbers();
   private readonly problems: Problem[] = [];
   private readonly notFinite: NotFinite[] = [];
+  private readonly comments: CommentLine[] = [];
   private readonly columns: (Float64Array | null)[];
   private readonly digits: Int32Array;
   private readonly kept: number;
@@ -87,6 +90,7 @@ export class TableParser {
       notFinite: this.notFinite,
       notFiniteCount: this.notFiniteCount,
       lineOfRow: (row) => this.lines.lineOf(row),
+      comments: this.comments,
     });
   }
 
@@ -119,10 +123,20 @@ export class TableParser {
       const first = skipBlanks(bytes, i);
       const c = bytes[first]!;
       if (c === newline) i = first + 1;
-      else if (isComment(c)) i = bytes.indexOf(newline, first) + 1;
+      else if (isComment(c)) i = this.keepComment(bytes, first);
       else if (c === 13 && bytes[first + 1] === newline) i = first + 2;
       else i = this.parseRow(bytes, first, to);
     }
+  }
+
+  /** Position of the next line. */
+  private keepComment(bytes: Uint8Array, first: number): number {
+    const next = bytes.indexOf(newline, first) + 1;
+    if (this.comments.length < keptComments) {
+      const text = new TextDecoder().decode(bytes.subarray(first + 1, Math.min(next - 1, first + 1 + keptCommentBytes))).trim();
+      if (text !== '') this.comments.push({ line: this.line, text });
+    }
+    return next;
   }
 
   private parseRow(bytes: Uint8Array, start: number, to: number): number {

@@ -10,6 +10,14 @@ export interface NumberTable {
   readonly notFinite: readonly NotFinite[];
   readonly notFiniteCount: number;
   readonly lineOfRow: (row: number) => number;
+  /** Comment lines of text, the first of them and shortened: what a file says about itself. */
+  readonly comments?: readonly CommentLine[];
+}
+
+export interface CommentLine {
+  readonly line: number;
+  /** Without the comment sign. */
+  readonly text: string;
 }
 
 export interface NotFinite {

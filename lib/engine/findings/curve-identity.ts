@@ -1,0 +1,171 @@
+import type { Finding } from '../contract/finding';
+import { builtInCurves, type BuiltInCurve } from '../noise/built-in-curves';
+import { short } from './spelt';
+
+/** An uploaded curve as one-sided power density at its own points, and what is written on it. */
+export interface UploadedCurve {
+  readonly name: string;
+  readonly f: ArrayLike<number>;
+  readonly psd: ArrayLike<number>;
+  /** Its name in the sheet, its file's name and the comment lines of the file. */
+  readonly writing: readonly string[];
+}
+
+/** Amplitude densities closer than this are the same curve printed. */
+const SAME = 0.005;
+/** Differences that are spoken of. */
+const APART = 0.03;
+/** So many octaves of the same numbers in one piece are no accident. */
+const LEAST_SAME = 2;
+/** And so many octaves must be apart before anything is asked. */
+const LEAST_APART = 0.25;
+/** A relation that holds everywhere must hold over this many octaves. */
+const LEAST_RELATED = 3;
+
+interface Point {
+  readonly fHz: number;
+  /** Width in octaves that the point stands for. */
+  readonly width: number;
+  /** ln of the amplitude density over that of the built-in curve. */
+  readonly apart: number;
+}
+
+/** More points than these say no more about a smooth curve. */
+const MOST_POINTS = 4000;
+
+/** The uploaded points inside a built-in curve's range; `read` says at which frequency the latter is asked. */
+function pointsAgainst({ f, psd }: UploadedCurve, curve: BuiltInCurve, read: (fHz: number) => number = (x) => x): Point[] {
+  const points: Point[] = [];
+  const stride = Math.ceil(f.length / MOST_POINTS);
+  for (let i = 0; i < f.length; i += stride) {
+    const at = read(f[i]!);
+    if (at < curve.fLowHz || at > curve.fHighHz) continue;
+    const [below, above] = [f[Math.max(0, i - stride)]!, f[Math.min(f.length - 1, i + stride)]!];
+    points.push({ fHz: f[i]!, width: Math.log2(above / below) / 2, apart: Math.log(psd[i]! / curve.psd(at)) / 2 });
+  }
+  return points;
+}
+
+const octaves = (points: readonly Point[]): number => points.reduce((sum, { width }) => sum + width, 0);
+
+/** Octaves of the longest piece in which every point is the same. */
+function longestSame(points: readonly Point[]): number {
+  let [best, here] = [0, 0];
+  for (const { width, apart } of points) {
+    here = Math.abs(apart) < SAME ? here + width : 0;
+    if (here > best) best = here;
+  }
+  return best;
+}
+
+const median = (values: readonly number[]): number => [...values].sort((a, b) => a - b)[values.length >> 1] ?? Number.NaN;
+
+/** Is the amplitude density that of the built-in curve times one number? */
+function constantRatio(points: readonly Point[]): number | null {
+  if (octaves(points) < LEAST_RELATED) return null;
+  const middle = median(points.map(({ apart }) => apart));
+  return points.every(({ apart }) => Math.abs(apart - middle) < SAME) ? Math.exp(middle) : null;
+}
+
+const spread = (values: readonly number[]): boolean => values.length > 0 && values.every((x) => Math.abs(x) < SAME);
+
+/** S taken for its root or the other way round: the column was read as another density. */
+function densityMistaken(curve: UploadedCurve, known: BuiltInCurve): string | null {
+  const points = pointsAgainst(curve, known);
+  if (octaves(points) < LEAST_RELATED) return null;
+  const lnKnown = points.map(({ fHz }) => Math.log(known.psd(fHz)));
+  const lnHere = points.map(({ apart }, i) => 2 * apart + lnKnown[i]!);
+  if (spread(lnHere.map((x, i) => x - lnKnown[i]! / 2))) return 'is the square root of it: an amplitude density read as a power density?';
+  if (spread(lnHere.map((x, i) => (x - 2 * lnKnown[i]!) / 2))) return 'is the square of it: a power density read as an amplitude density?';
+  return null;
+}
+
+const angular = (curve: UploadedCurve, known: BuiltInCurve): boolean => {
+  const points = pointsAgainst(curve, known, (x) => x / (2 * Math.PI));
+  return octaves(points) >= LEAST_RELATED && spread(points.map(({ apart }) => apart));
+};
+
+interface Octave {
+  readonly fromHz: number;
+  readonly toHz: number;
+  readonly ratio: number;
+}
+
+/** Median ratio octave by octave, neighbours that agree drawn together. */
+function byOctave(points: readonly Point[]): Octave[] {
+  const found: Octave[] = [];
+  const first = points[0]!.fHz;
+  const count = Math.max(1, Math.ceil(Math.log2(points[points.length - 1]!.fHz / first) - 1e-9));
+  for (let k = 0; k < count; k++) {
+    const [from, to] = [first * 2 ** k, first * 2 ** (k + 1)];
+    const inside = points.filter(({ fHz }) => fHz >= from && (fHz < to || k === count - 1));
+    if (inside.length === 0) continue;
+    const ratio = Math.exp(median(inside.map(({ apart }) => apart)));
+    const before = found[found.length - 1];
+    const alike = before !== undefined && short(before.ratio) === short(ratio);
+    const agree = before !== undefined && Math.abs(Math.log(before.ratio)) < SAME && Math.abs(Math.log(ratio)) < SAME;
+    const toHz = Math.min(to, points[points.length - 1]!.fHz);
+    if (alike || agree) found[found.length - 1] = { ...before, toHz };
+    else found.push({ fromHz: from, toHz, ratio });
+  }
+  return found;
+}
+
+const MOST_OCTAVES = 8;
+
+function shapeOf(points: readonly Point[]): string {
+  const far = points.reduce((p, q) => (Math.abs(q.apart) > Math.abs(p.apart) ? q : p));
+  const above = far.apart > 0;
+  const ratio = Math.exp(Math.abs(far.apart));
+  const list = byOctave(points)
+    .slice(0, MOST_OCTAVES)
+    .map((o) => `${short(o.fromHz)}–${short(o.toHz)} Hz ${Math.abs(Math.log(o.ratio)) < SAME ? 'equal' : `×${short(o.ratio)}`}`);
+  return `lies up to ×${short(ratio)} ${above ? 'above' : 'below'} it, at ${short(far.fHz)} Hz. Ratio of amplitude densities by octaves: ${list.join(', ')}`;
+}
+
+/** Does the writing on it name this curve: by its title, or by its id? Ids such as A1 stand for much else and count in brackets or after "curve" only. */
+function isNamed({ writing }: UploadedCurve, { id, title }: BuiltInCurve): boolean {
+  const plain = (text: string): string => text.toLowerCase().replace(/[^a-z0-9]+/g, ' ');
+  const marked = new RegExp(`(\\(|\\bcurve )${id}\\b`);
+  const alone = new RegExp(`(^|[\\s"'/])${id}([\\s"'.,;:/]|$)`);
+  return writing.some((line) => marked.test(line) || plain(line).includes(plain(title).trim()) || (/^[GS]/.test(id) && alone.test(line)));
+}
+
+interface Relation {
+  readonly says: string;
+  readonly fix: string;
+}
+
+function relationTo(curve: UploadedCurve, known: BuiltInCurve, named: boolean): Relation | null {
+  const points = pointsAgainst(curve, known);
+  const constant = constantRatio(points);
+  const sides = [Math.SQRT2, Math.SQRT1_2].find((factor) => constant !== null && Math.abs(Math.log(constant / factor)) < SAME);
+  if (sides !== undefined) return { says: `its power density is everywhere ×${sides > 1 ? 2 : 0.5} of it: one-sided and two-sided exchanged?`, fix: 'Check "sided" in the sheet, or say why the factor is right.' };
+  const mistaken = densityMistaken(curve, known);
+  if (mistaken !== null) return { says: mistaken, fix: 'Check the column of the noise in the sheet: asd, psd or characteristic.' };
+  if (angular(curve, known)) return { says: 'is that curve with its frequencies multiplied by 2π: an angular frequency in the first column?', fix: 'Give frequencies in Hz.' };
+  const apart = octaves(points.filter((point) => Math.abs(point.apart) > APART));
+  const same = longestSame(points);
+  const close = same >= LEAST_SAME && apart >= LEAST_APART;
+  const claimed = named && points.length > 1 && octaves(points) >= 1 && apart >= LEAST_APART;
+  if (!close && !claimed) return null;
+  const ends = same >= LEAST_APART ? 'One coefficient may be mistyped, or noise was added to it.' : 'It may be another version.';
+  return { says: `${shapeOf(points)}. ${ends}`, fix: `Correct the curve, name it otherwise, or say why it differs; the published curve is built in as ${known.id}.` };
+}
+
+/** V20: an uploaded curve beside the published ones that its name, or its own numbers, say it is. At most one question. */
+export function curveIdentity(curve: UploadedCurve): Finding | null {
+  const named = builtInCurves.filter((known) => isNamed(curve, known));
+  const equal = (known: BuiltInCurve): boolean => {
+    const points = pointsAgainst(curve, known);
+    return octaves(points) >= 1 && points.every(({ apart }) => Math.abs(apart) < APART);
+  };
+  if (named.some(equal) || (named.length === 0 && builtInCurves.some(equal))) return null;
+  for (const known of [...named, ...builtInCurves.filter((other) => !named.includes(other))]) {
+    const relation = relationTo(curve, known, named.includes(known));
+    if (relation === null) continue;
+    const opening = named.includes(known) ? `The curve ${curve.name} is called ${known.id} (${known.title}), but` : `The curve ${curve.name} is close to ${known.id} (${known.title}), but`;
+    return { code: 'engine/curve-identity', level: 'needs-answer', where: curve.name, text: `${opening} ${relation.says.startsWith('its') ? '' : 'it '}${relation.says}`, fix: relation.fix };
+  }
+  return null;
+}
