@@ -21,11 +21,3 @@ export const quantityIds = [
   'radius-extrapolation', 'hybrid-snr', 'em-energy', 'em-ratio', 'field-exponent', 'em-frequency', 'degeneracy', 'em-mirroring', 'disc-luminosity',
   'cycles', 'eccentricity',
 ] as const;
-
-/** Settings of the format that only quantities not built yet know. */
-export const laterSettings = [
-  'joinHz', 'amplitudeOrder', 'formalOrder', 'weight', 'observable', 'method', 'fit', 'statistic', 'extrapolationOrder',
-  'fieldGauss', 'plasmaDensityCm3', 'radiativeEfficiency', 'accretionRateMsunPerYear', 'internalEnergyErg', 'radiusM',
-] as const;
-
-export const laterRoles = ['series', 'em', 'gw', 'signals', 'templates'] as const;

@@ -1,7 +1,7 @@
 import type { Quantity } from '@/lib/engine/contract/quantity';
 import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settings';
 import type { Problem } from '@/lib/kernel/problem';
-import { laterSettings, type Catalogue } from './catalogue';
+import type { Catalogue } from './catalogue';
 import { checkPart, unknownName } from './check-part';
 import { describe, pointer } from './pointer';
 import { settingSchema, sweptExpectation, sweptNumber, sweptSchema } from './setting-schema';
@@ -19,7 +19,10 @@ export function parseSettings(raw: Readonly<Record<string, unknown>>, quantity: 
     const row = catalogue.settings.get(name);
     if (!row) continue;
     const parsed = checkPart(settingSchema(row), value, [...path, name], [], problems);
-    if (!fault && parsed !== null) settings[name] = parsed;
+    if (!fault && parsed !== null) {
+      problems.push(...choiceProblems(name, parsed, quantity, [...path, name]));
+      settings[name] = parsed;
+    }
   }
   const { fLowHz, fHighHz } = settings as DeclaredSettings;
   if (fLowHz !== undefined && fHighHz !== undefined && !(fHighHz > fLowHz)) problems.push(bandOrder(fHighHz, fLowHz, [...path, 'fHighHz']));
@@ -31,10 +34,17 @@ const bandOrder = (high: number, low: number, path: Path): Problem => ({ code: '
 function settingFault(name: string, quantity: Quantity, catalogue: Catalogue, path: Path): Problem | null {
   const allowed: readonly string[] = quantity.settings;
   if (allowed.includes(name)) return null;
-  const later = (laterSettings as readonly string[]).includes(name);
-  if (!later && !catalogue.settings.has(name)) return unknownName(name, path, allowed);
+  if (!catalogue.settings.has(name)) return unknownName(name, path, allowed);
   const hint = whyNot(name, quantity.id);
   return { code: 'claims/setting-not-for-quantity', where: pointer(...path, name), saw: `the setting "${name}"`, expected: `a setting of ${quantity.id}: ${allowed.join(', ')}`, ...(hint ? { hint } : {}) };
+}
+
+/** A word of the setting that this quantity has no meaning for. */
+function choiceProblems(name: string, value: unknown, quantity: Quantity, path: Path): Problem[] {
+  const choices = quantity.choices?.[name as SettingName];
+  if (!choices) return [];
+  const words = typeof value === 'object' && value !== null ? Object.keys(value) : [String(value)];
+  return words.every((word) => choices.includes(word)) ? [] : [{ code: 'claims/not-allowed', where: pointer(...path), saw: describe(value), expected: `one of ${choices.map((choice) => `"${choice}"`).join(', ')} for ${quantity.id}` }];
 }
 
 /** Where the reason is not plain from the list of what is allowed. */
@@ -56,8 +66,7 @@ export function parseSweep(raw: Readonly<Record<string, unknown>>, quantity: Qua
   const at = [...path, name];
   const row = catalogue.settings.get(name);
   if (!row || !sweepable.includes(name)) {
-    const known = row !== undefined || (laterSettings as readonly string[]).includes(name);
-    problems.push(known ? { code: 'claims/sweep', where: pointer(...at), saw: `a sweep over "${name}"`, expected: `a sweep over one of ${sweepable.join(', ')}` } : unknownName(name, path, sweepable));
+    problems.push(row !== undefined ? { code: 'claims/sweep', where: pointer(...at), saw: `a sweep over "${name}"`, expected: `a sweep over one of ${sweepable.join(', ')}` } : unknownName(name, path, sweepable));
     return null;
   }
   if (name in declared) problems.push({ code: 'claims/sweep', where: pointer(...at), saw: `"${name}" both in "settings" and in "over"`, expected: 'it in one of the two' });

@@ -5,7 +5,7 @@ import { didYouMean } from './nearest-name';
 import { describe, pointer } from './pointer';
 
 const highestL = 40;
-const waveformNames = ['t', 'f', 're', 'im', 'plus', 'cross', 'amplitude', 'phase', 're22', 'im22', 'amp22', 'phase22', '_'];
+const waveformNames = ['t', 'f', 're', 'im', 'plus', 'cross', 'amplitude', 'phase', 're22', 'im22', 'amp22', 'phase22', 'L', '_'];
 const noiseNames = ['f', 'asd', 'psd', 'characteristic', '_'];
 
 /**
@@ -49,6 +49,7 @@ function waveformRole(name: string, domain: 'time' | 'frequency'): ColumnRole | 
   if (name === '_') return { kind: 'skip' };
   if (name === (domain === 'time' ? 't' : 'f')) return { kind: 'axis' };
   if (name === 'plus' || name === 'cross') return { kind: name };
+  if (name === 'L') return { kind: 'luminosity' };
   const found = /^(re|im|amplitude|amp|phase)(?:(\d)(-?\d)|(\d{1,2}),(-?\d{1,2}))?$/.exec(name);
   if (!found) return null;
   const kind = found[1] === 'amp' ? 'amplitude' : (found[1] as 're' | 'im' | 'amplitude' | 'phase');
@@ -64,13 +65,20 @@ export function modeFaults([l, m]: ModeIndex, name: string, leastL: number, wher
 }
 
 /** Do the columns make a series: one axis, whole pairs, one kind of content, no mode twice? */
-export function layoutProblems(columns: readonly Column[], axis: 't' | 'f', path: readonly PropertyKey[]): Problem[] {
+export function layoutProblems(columns: readonly Column[], axis: 't' | 'f', luminosity: boolean, path: readonly PropertyKey[]): Problem[] {
   const where = pointer(...path);
   const saw = describe(columns.map((column) => column.name));
   const problem = (expected: string, hint?: string): Problem => ({ code: 'claims/columns', where, saw, expected, ...(hint ? { hint } : {}) });
   const problems: Problem[] = [];
   const roles = columns.map((column) => column.role);
   if (roles.filter((role) => role.kind === 'axis').length !== 1) problems.push(problem(`the column "${axis}" once`));
+  const curves = roles.filter((role) => role.kind === 'luminosity').length;
+  if (luminosity || curves > 0) {
+    const alone = roles.every((role) => role.kind === 'axis' || role.kind === 'luminosity' || role.kind === 'skip');
+    if (!luminosity) problems.push(problem('"L" only beside variable "luminosity"'));
+    else if (curves !== 1 || !alone) problems.push(problem('"t" and "L" once each, the luminosity in erg/s'));
+    return problems;
+  }
   const polarised = roles.filter((role) => role.kind === 'plus' || role.kind === 'cross');
   const modal = roles.filter((role) => 'mode' in role);
   if (polarised.length > 0 && modal.length > 0) problems.push(problem('either plus and cross, or modes, not both'));

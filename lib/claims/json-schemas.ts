@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
 import { resultSchema } from './result-schema';
+import { singleRoles } from './roles';
 import { settingSchema, sweptSchema } from './setting-schema';
 import { claimSchema, noiseSchema, sheetSchema, waveformSchema } from './sheet-schema';
 import type { Catalogue } from './catalogue';
@@ -22,7 +23,11 @@ export function claimSheetJsonSchema(catalogue: Catalogue): JsonSchema {
   const swept = rows.filter((row) => sweeps.includes(row.name)).map((row) => z.strictObject({ [row.name]: z.array(described(row, sweptSchema(row))).min(1) }));
   const claim = claimSchema.extend({
     quantity: z.enum([...catalogue.quantities.keys()]),
-    of: z.strictObject({ a: z.string().optional(), b: z.string().optional() }),
+    of: z.strictObject({
+      ...Object.fromEntries([...singleRoles, 'series'].map((role) => [role, z.string().optional()])),
+      signals: z.array(z.string()).min(1).optional(),
+      templates: z.array(z.string()).min(1).optional(),
+    }),
     settings: settings.optional(),
     over: swept.length > 0 ? z.union(swept).optional() : z.undefined(),
     claimed: z.union([claimedEntry, z.array(claimedEntry).min(1)]),

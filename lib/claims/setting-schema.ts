@@ -49,7 +49,7 @@ export function expectation(row: SettingRow): string {
     case 'cosmology':
       return '{"h0": 20 to 150, "omegaM": 0 to 1}';
     case 'place':
-      return `one of ${shape.options.map(quoted).join(', ')}, or ${shape.numbers.map((number) => `{"${number.name}": number${rangeWords(number)}}`).join(' or ')}`;
+      return `one of ${shape.options.map(quoted).join(', ')}, or ${[...shape.numbers.map((number) => `{"${number.name}": number${rangeWords(number)}}`), ...(shape.flags ?? []).map((flag) => `{"${flag}": true}`)].join(' or ')}`;
   }
 }
 
@@ -93,7 +93,7 @@ function shapeSchema(shape: SettingShape, error: string): z.ZodType {
     case 'cosmology':
       return z.strictObject({ h0: z.number().min(20).max(150), omegaM: z.number().min(0).max(1) }, { error });
     case 'place':
-      return z.union([literals(shape.options, error), ...shape.numbers.map((number) => z.strictObject({ [number.name]: bounded(number, error) }, { error }))], { error });
+      return z.union([literals(shape.options, error), ...shape.numbers.map((number) => z.strictObject({ [number.name]: bounded(number, error) }, { error })), ...(shape.flags ?? []).map((flag) => z.strictObject({ [flag]: z.literal(true, { error }) }, { error }))], { error });
   }
 }
 

@@ -1,6 +1,5 @@
-import type { Column, SourceFile, WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { Column, RunFacts, SourceFile, WaveformDeclaration } from '@/lib/engine/contract/layout';
 import type { ModeIndex } from '@/lib/engine/contract/settings';
-import type { BinaryFacts } from '@/lib/engine/contract/waveform';
 import type { Problem } from '@/lib/kernel/problem';
 import { checkPart } from './check-part';
 import { layoutProblems, modeFaults, waveformColumns } from './columns';
@@ -35,21 +34,25 @@ function declarationOf(name: string, raw: RawWaveform, files: SourceFile[], colu
     domain,
     variable: raw.variable ?? 'strain',
     timeUnit: raw.timeUnit ?? (domain === 'time' ? 'M' : '1/M'),
-    amplitudeUnit: raw.amplitudeUnit === 'strain' ? 'strain' : 'rh/M',
+    amplitudeUnit: raw.amplitudeUnit ?? (raw.variable === 'phi2' ? 'geometric' : 'rh/M'),
     polarisation: raw.polarisation ?? 'plus-minus-i-cross',
-    negativeM: raw.negativeM ?? null,
+    // φ₂ has no mirror rule: its modes are those that are given.
+    negativeM: raw.variable === 'phi2' ? 'given' : (raw.negativeM ?? null),
     psi4Factor: raw.psi4Factor ?? 1,
     mode: raw.mode ?? [2, 2],
     modeAssumed: !named,
     totalMassMsun: raw.totalMassMsun ?? null,
     distanceMpc: raw.distanceMpc ?? null,
     junkEndM: raw.junkEndM ?? null,
-    binary: factsOf(raw.binary ?? {}),
+    binary: present(raw.binary ?? {}),
+    run: runOf(raw),
   };
 }
 
+const runOf = ({ series, resolution, extractionRadiusM, radiusType, timeLabel, tetrad }: RawWaveform): RunFacts => present({ series, resolution, extractionRadiusM, radiusType, timeLabel, tetrad });
+
 /** Without the `undefined` entries that zod's optional fields may carry. */
-const factsOf = (binary: NonNullable<RawWaveform['binary']>): BinaryFacts => Object.fromEntries(Object.entries(binary).filter(([, fact]) => fact !== undefined));
+const present = <T extends object>(facts: T): { [K in keyof T]?: NonNullable<T[K]> } => Object.fromEntries(Object.entries(facts).filter(([, fact]) => fact !== undefined)) as { [K in keyof T]?: NonNullable<T[K]> };
 
 /** What this version does not read or compute yet is refused by name, never guessed at. */
 function kindProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
@@ -58,8 +61,6 @@ function kindProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
   const format = raw.format ?? formatByEnding(file);
   if (format !== 'text') problems.push({ code: 'formats/not-read-yet', where: pointer(...path, raw.format ? 'format' : 'file'), saw: `a file in the format ${format}`, expected: 'text', hint: 'This version reads text columns; export the series as text.' });
   else if (raw.datasets !== undefined || raw.time !== undefined) problems.push(refused(pointer(...path, raw.datasets ? 'datasets' : 'time'), raw.datasets ?? raw.time, 'no dataset paths for a text file'));
-  if (raw.variable === 'phi2' || raw.variable === 'luminosity')
-    problems.push({ code: 'claims/not-built-yet', where: pointer(...path, 'variable'), saw: describe(raw.variable), expected: '"strain", "news" or "psi4"', hint: 'This version does not compute electromagnetic quantities yet.' });
   return problems;
 }
 
@@ -75,14 +76,37 @@ function unitProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
   const units = domain === 'time' ? ['M', 's'] : ['1/M', 'Hz'];
   if (raw.timeUnit !== undefined && !units.includes(raw.timeUnit)) return [refused(pointer(...path, 'timeUnit'), raw.timeUnit, `"${units[0]}" or "${units[1]}" for domain "${domain}"`)];
   const physicalTime = raw.timeUnit === 's' || raw.timeUnit === 'Hz';
+  if (raw.tetrad !== undefined && raw.variable !== 'phi2') problems.push(refused(pointer(...path, 'tetrad'), raw.tetrad, 'it only beside variable "phi2"'));
+  if (raw.psi4Factor !== undefined && raw.variable !== 'psi4') problems.push(refused(pointer(...path, 'psi4Factor'), raw.psi4Factor, 'it only beside variable "psi4"'));
+  if (raw.variable === 'luminosity') return [...problems, ...luminosityProblems(raw, path)];
+  if (raw.variable === 'phi2') return [...problems, ...phi2Problems(raw, path)];
   const amplitude = raw.amplitudeUnit ?? 'rh/M';
   if (amplitude === 'geometric' || amplitude === 'perField') problems.push(refused(pointer(...path, 'amplitudeUnit'), amplitude, '"rh/M" or "strain"', 'These units are for φ₂.'));
   else if (physicalTime !== (amplitude === 'strain'))
     problems.push(refused(pointer(...path, 'amplitudeUnit'), raw.amplitudeUnit ?? '"rh/M", the house default', physicalTime ? `"strain" with times in "${raw.timeUnit}"` : '"rh/M" with times in M', 'Either both axis and amplitude are physical (s and strain) or both are in units of M.'));
   if (physicalTime && raw.variable !== undefined && raw.variable !== 'strain') problems.push(refused(pointer(...path, 'variable'), raw.variable, '"strain" for physical units'));
-  if (raw.psi4Factor !== undefined && raw.variable !== 'psi4') problems.push(refused(pointer(...path, 'psi4Factor'), raw.psi4Factor, 'it only beside variable "psi4"'));
   return problems;
 }
+
+function luminosityProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
+  const alien = (['amplitudeUnit', 'polarisation', 'negativeM', 'mode'] as const).filter((name) => raw[name] !== undefined);
+  return [
+    ...alien.map((name) => refused(pointer(...path, name), raw[name], 'it not beside a luminosity, which is in erg/s and has no modes')),
+    ...(raw.domain === 'frequency' ? [refused(pointer(...path, 'domain'), raw.domain, '"time" for a luminosity')] : []),
+  ];
+}
+
+function phi2Problems(raw: RawWaveform, path: readonly string[]): Problem[] {
+  const problems: Problem[] = [];
+  if (raw.domain === 'frequency') problems.push(refused(pointer(...path, 'domain'), raw.domain, '"time" for φ₂'));
+  if (raw.timeUnit !== undefined && raw.timeUnit !== 'M') problems.push(refused(pointer(...path, 'timeUnit'), raw.timeUnit, '"M" for φ₂'));
+  if (raw.amplitudeUnit === 'rh/M' || raw.amplitudeUnit === 'strain') problems.push(refused(pointer(...path, 'amplitudeUnit'), raw.amplitudeUnit, '"geometric" or "perField" for φ₂'));
+  if (raw.negativeM !== undefined && raw.negativeM !== 'given') problems.push(refused(pointer(...path, 'negativeM'), raw.negativeM, '"given" for φ₂, which has no mirror rule'));
+  return problems;
+}
+
+/** Spin weight −1 begins at l = 1, −2 at l = 2. */
+const leastL = (raw: RawWaveform): number => (raw.variable === 'phi2' ? 1 : 2);
 
 function filesOf(raw: RawWaveform, path: readonly string[], problems: Problem[]): SourceFile[] {
   if ((raw.file === undefined) === (raw.files === undefined)) {
@@ -113,7 +137,7 @@ function filesByMode(raw: RawWaveform, path: readonly string[], problems: Proble
       continue;
     }
     const mode: ModeIndex = [Number(found[1]), Number(found[2]) + 0];
-    problems.push(...modeFaults(mode, key, 2, where));
+    problems.push(...modeFaults(mode, key, leastL(raw), where));
     if (seen.has(String(mode))) problems.push({ code: 'claims/mode', where, saw: `the mode ${String(mode)} twice`, expected: 'each mode once' });
     seen.add(String(mode));
     files.push({ file, mode });
@@ -129,13 +153,13 @@ function columnsOf(raw: RawWaveform, path: readonly string[], problems: Problem[
   const at = [...path, 'columns'];
   const domain = raw.domain ?? 'time';
   const before = problems.length;
-  const columns = waveformColumns(raw.columns, domain, 2, at, problems);
-  if (raw.mode !== undefined) problems.push(...modeFaults(raw.mode, `mode ${raw.mode.join(', ')}`, 2, pointer(...path, 'mode')));
+  const columns = waveformColumns(raw.columns, domain, leastL(raw), at, problems);
+  if (raw.mode !== undefined) problems.push(...modeFaults(raw.mode, `mode ${raw.mode.join(', ')}`, leastL(raw), pointer(...path, 'mode')));
   if (problems.length > before) return columns;
-  problems.push(...layoutProblems(columns, domain === 'time' ? 't' : 'f', at));
+  problems.push(...layoutProblems(columns, domain === 'time' ? 't' : 'f', raw.variable === 'luminosity', at));
   const named = columns.some(({ role }) => 'mode' in role && role.mode !== null);
   const polarised = columns.some(({ role }) => role.kind === 'plus');
-  if (raw.files !== undefined && (named || polarised)) problems.push(refused(pointer(...at), raw.columns, '"re im" or "amplitude phase" without a mode, as "files" name it'));
+  if (raw.files !== undefined && (named || polarised || raw.variable === 'luminosity')) problems.push(refused(pointer(...at), raw.columns, '"re im" or "amplitude phase" without a mode, as "files" name it'));
   if (raw.mode !== undefined && (named || polarised)) problems.push(refused(pointer(...path, 'mode'), raw.mode, named ? 'no "mode" beside columns that name theirs' : 'no "mode" for plus and cross columns'));
   if (domain === 'frequency' && polarised) problems.push(refused(pointer(...at), raw.columns, '"re im" or "amplitude phase", since a transform is complex'));
   return columns;

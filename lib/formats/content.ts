@@ -11,6 +11,8 @@ export interface ModeTable {
 
 /** Columns to content in the house convention (settings.md rule 2.1): h = plus − i·cross, ψ₄ by its factor. */
 export function contentOf(declaration: WaveformDeclaration, tables: readonly ModeTable[]): ModeSet | LineOfSight {
+  const luminosity = declaration.columns.findIndex((column) => column.role.kind === 'luminosity');
+  if (luminosity >= 0) return { kind: 'line-of-sight', plus: tables[0]!.table.columns[luminosity]!, cross: null };
   const plus = declaration.columns.findIndex((column) => column.role.kind === 'plus');
   if (plus >= 0) return polarisations(declaration, tables[0]!.table, plus);
   const modes = tables.flatMap(({ table, mode }) => modesOf(declaration, table, mode));

@@ -70,6 +70,7 @@ function waveformOf(declaration: WaveformDeclaration, tables: readonly ModeTable
     ownDistanceMpc: declaration.distanceMpc,
     junkEndM: declaration.junkEndM,
     binary: declaration.binary,
+    ...declaration.run,
     significantDigits: printedDigits(tables.map(({ table }) => table), declaration.columns),
   };
 }

@@ -1,6 +1,8 @@
-import type { Claim, ClaimSheet } from '@/lib/claims/claim';
+import { waveformNames, type Claim, type ClaimSheet } from '@/lib/claims/claim';
+import { inputRoles } from '@/lib/claims/claim-inputs';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { Measurement } from '@/lib/engine/contract/measurement';
+import type { Waveform } from '@/lib/engine/contract/waveform';
 import { Cancelled, notComputable, type QuantityInputs, type Watch } from '@/lib/engine/contract/quantity';
 import { duplicateFindings, type Inputs } from './read-inputs';
 
@@ -14,7 +16,7 @@ export interface Extent {
 export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, extent: Extent, watch: Watch): Measurement {
   const points = (claim.over?.values ?? [null]).map((value) => (claim.over && value !== null ? { [claim.over.setting]: value } : {}));
   const found = inputFindings(claim, sheet, inputs);
-  const resolved = resolve(claim, inputs);
+  const resolved = resolve(claim, sheet, inputs);
   const stopped = found.some((finding) => finding.level === 'stops-lodging');
   if (stopped || resolved === null) return notComputable(found, points);
   const measurement = measureOrStop(claim, resolved, extent, watch, points);
@@ -22,18 +24,27 @@ export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, ex
 }
 
 function inputFindings(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Finding[] {
-  const names = [...new Set([claim.of.a, claim.of.b])].filter((name) => name !== undefined);
+  const names = waveformNames(claim.of);
   const ofWaveforms = names.flatMap((name) => inputs.waveforms.get(name)?.findings ?? []);
   const ofNoise = claim.noise === null ? [] : (inputs.noise.get(claim.noise)?.findings ?? []);
   return [...ofWaveforms, ...ofNoise, ...duplicateFindings(claim, sheet, inputs.files)];
 }
 
-function resolve(claim: Claim, inputs: Inputs): QuantityInputs | null {
-  const a = claim.of.a === undefined ? undefined : (inputs.waveforms.get(claim.of.a)?.input ?? null);
-  const b = claim.of.b === undefined ? undefined : (inputs.waveforms.get(claim.of.b)?.input ?? null);
+function resolve(claim: Claim, sheet: ClaimSheet, inputs: Inputs): QuantityInputs | null {
+  const found = (name: string): Waveform | null => inputs.waveforms.get(name)?.input ?? null;
   const noise = claim.noise === null ? null : (inputs.noise.get(claim.noise)?.input ?? null);
-  if (a === null || b === null || (claim.noise !== null && noise === null)) return null;
-  return { of: { ...(a ? { a } : {}), ...(b ? { b } : {}) }, noise };
+  const names = waveformNames(claim.of);
+  if (names.some((name) => found(name) === null) || (claim.noise !== null && noise === null)) return null;
+  const read = (list: readonly string[]): Waveform[] => list.flatMap((name) => found(name) ?? []);
+  const of = inputRoles(Object.fromEntries(Object.entries(claim.of).map(([role, value]) => [role, read([value].flat())])));
+  const relatives = new Map(names.map((name) => [name, read(relativesOf(name, sheet))] as const).filter(([, list]) => list.length > 0));
+  return { of, noise, ...(relatives.size > 0 ? { relatives } : {}) };
+}
+
+/** Other runs of the simulation that the waveform belongs to, in the order of the sheet. */
+function relativesOf(name: string, sheet: ClaimSheet): string[] {
+  const series = sheet.waveforms.get(name)?.run.series;
+  return series === undefined ? [] : [...sheet.waveforms.values()].filter((w) => w.run.series === series && w.name !== name).map((w) => w.name);
 }
 
 /** A defect of one quantity must not take the other claims with it: it fails closed and says so. */

@@ -1,4 +1,4 @@
-import type { Claim, ClaimSheet } from '@/lib/claims/claim';
+import { waveformNames, type Claim, type ClaimSheet } from '@/lib/claims/claim';
 import { sheetFindings } from '@/lib/claims/sheet-findings';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { NoiseDeclaration } from '@/lib/engine/contract/layout';
@@ -77,7 +77,7 @@ function once(problems: readonly Problem[]): Problem[] {
  * file names, or two modes of one waveform. One file named for both waveforms is meant that way.
  */
 export function duplicateFindings(claim: Claim, sheet: ClaimSheet, files: HashedFiles): Finding[] {
-  const names = [...new Set([claim.of.a, claim.of.b])].filter((name) => name !== undefined);
+  const names = waveformNames(claim.of);
   const all = names.flatMap((name) => (sheet.waveforms.get(name)?.files ?? []).map(({ file }) => ({ name, file, sha256: files.sha256(file) })));
   return all.flatMap((first, i) =>
     all.slice(i + 1).flatMap((second): Finding[] => {

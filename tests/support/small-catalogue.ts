@@ -1,6 +1,6 @@
 import type { Catalogue } from '@/lib/claims/catalogue';
 import type { Measurement } from '@/lib/engine/contract/measurement';
-import type { MeasureRequest, Quantity, Watch } from '@/lib/engine/contract/quantity';
+import type { MeasureRequest, Quantity, Role, Watch } from '@/lib/engine/contract/quantity';
 import type { SettingName } from '@/lib/engine/contract/settings';
 import { settingsTable } from '@/lib/engine/quantities/settings-table';
 
@@ -12,7 +12,7 @@ const noMeasure: Measure = () => {
   throw new Error('this test measures nothing');
 };
 
-const quantity = (id: string, roles: readonly ('a' | 'b')[], extra: readonly SettingName[], measure: Measure): Quantity => ({
+const quantity = (id: string, roles: readonly Role[], extra: readonly SettingName[], measure: Measure): Quantity => ({
   id,
   title: id,
   symbol: 'x',

@@ -116,7 +116,7 @@ export function pairPreparer(request: MeasureRequest): (at: At) => PairPoint | F
     B: once(() => remembering(pairOnSplines(a.tones.B, b.tones.B))),
   };
   const settingsAt = (at: ReadAt): AlignmentSettings => ({ alignment: declared.alignment ?? houseValues.alignment, window: declared.window ?? null, at });
-  return (swept) => ({ a, b, mode: sighted ? null : mode, severalModes: recordA.modes.length > 1, routes, settings: settingsAt(swept.at === undefined ? (declared.at ?? houseValues.at) : { timeM: swept.at }) });
+  return (swept) => ({ a, b, mode: sighted ? null : mode, severalModes: recordA.modes.length > 1, routes, settings: settingsAt(swept.at === undefined ? placeIn(declared.at) : { timeM: swept.at }) });
 }
 
 export type Which = 'phase' | 'amplitude';
@@ -125,6 +125,9 @@ export interface PairResult {
   readonly aligned: Aligned;
   readonly residual: Residual;
 }
+
+/** The sheet refuses a ringdown for two records; the house default stands where one would have come through. */
+const placeIn = (at: DeclaredSettings['at']): ReadAt => (at === undefined || (typeof at === 'object' && 'ringdown' in at) ? houseValues.at : at);
 
 /** Alignment and reading by one route. */
 export function pairBy(route: PairRoute, settings: AlignmentSettings, which: Which): PairResult | NotAligned {

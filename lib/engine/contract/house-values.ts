@@ -25,10 +25,19 @@ export const houseValues = {
   parameters: 1,
   rateLaw: 'euclidean',
   templateMassRange: [0.5, 2],
+  amplitudeOrder: 1,
+  extrapolationOrder: 2,
+  weight: 'plane',
+  statistic: 'minimum',
+  fit: 'mean',
+  plasmaDensityCm3: 0.03,
 } as const satisfies DeclaredSettings;
 
 /** From the peak, in M: where a ringdown is fitted unless `window` says otherwise. `window` has another default for each quantity. */
 export const ringdownWindow = [25, 60] as const;
+
+/** The match at which a signal counts as seen, unless `threshold` says otherwise. */
+export const houseMatchThreshold = 0.965;
 
 /** The mass to which a recoil is referred unless `normaliseBy` says otherwise. */
 export const houseRecoilMass = 'remnant';

@@ -1,4 +1,4 @@
-import type { BinaryFacts, Variable } from './waveform';
+import type { BinaryFacts, Variable, Waveform } from './waveform';
 import type { ModeIndex } from './settings';
 
 /**
@@ -9,7 +9,7 @@ export type ColumnRole =
   | { readonly kind: 'axis' }
   | { readonly kind: 'skip' }
   | { readonly kind: 're' | 'im' | 'amplitude' | 'phase'; readonly mode: ModeIndex | null }
-  | { readonly kind: 'plus' | 'cross' }
+  | { readonly kind: 'plus' | 'cross' | 'luminosity' }
   | { readonly kind: 'noise'; readonly meaning: 'asd' | 'psd' | 'characteristic' };
 
 export interface Column {
@@ -31,7 +31,7 @@ export interface WaveformDeclaration {
   readonly domain: 'time' | 'frequency';
   readonly variable: Variable;
   readonly timeUnit: 'M' | 's' | '1/M' | 'Hz';
-  readonly amplitudeUnit: 'rh/M' | 'strain';
+  readonly amplitudeUnit: Waveform['amplitudeUnit'];
   readonly polarisation: 'plus-minus-i-cross' | 'plus-plus-i-cross';
   readonly negativeM: 'mirror' | 'given' | 'none' | null;
   readonly psi4Factor: number;
@@ -43,7 +43,12 @@ export interface WaveformDeclaration {
   readonly distanceMpc: number | null;
   readonly junkEndM: number | null;
   readonly binary: BinaryFacts;
+  /** Which run of a simulation this is, as far as the sheet says. */
+  readonly run: RunFacts;
 }
+
+/** What tells one run of a simulation from another, and the frame it was read off in. */
+export type RunFacts = Pick<Waveform, 'series' | 'resolution' | 'extractionRadiusM' | 'radiusType' | 'timeLabel' | 'tetrad'>;
 
 export type NoiseDeclaration =
   | { readonly kind: 'table'; readonly name: string; readonly file: string; readonly columns: readonly Column[]; readonly sided: 'one' | 'two' }

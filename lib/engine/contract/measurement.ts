@@ -29,7 +29,7 @@ export interface MeasuredPoint {
 
 /** A curve to draw: plain numbers with units, thinned for the screen, never used for a verdict. */
 export interface Figure {
-  readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux';
+  readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux' | 'curve';
   readonly title: string;
   /** The point that is drawn, of a sweep; absent where the figure is of all points. */
   readonly at?: Readonly<Record<string, number>>;

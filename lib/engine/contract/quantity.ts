@@ -2,12 +2,20 @@ import type { Finding } from './finding';
 import type { Measurement } from './measurement';
 import type { NoiseCurve } from './noise-curve';
 import type { DeclaredSettings, SettingName } from './settings';
-import type { Waveform } from './waveform';
+import type { Variable, Waveform } from './waveform';
 
-/** The roles of a claim's `of`, each resolved to what the sheet names. */
+/** A part that one waveform plays in a claim. */
+export type SingleRole = 'a' | 'b' | 'em' | 'gw';
+/** A part that several play: the runs of one simulation, or a list. */
+export type ListRole = 'series' | 'signals' | 'templates';
+export type Role = SingleRole | ListRole;
+
+/** The roles of a claim's `of`, each resolved to what the sheet names; lists in the order of the sheet. */
 export interface QuantityInputs {
-  readonly of: { readonly a?: Waveform; readonly b?: Waveform };
+  readonly of: { readonly [role in SingleRole]?: Waveform } & { readonly [role in ListRole]?: readonly Waveform[] };
   readonly noise: NoiseCurve | null;
+  /** Other runs of the same simulation, by the name of the waveform of this claim that they belong to. */
+  readonly relatives?: ReadonlyMap<string, readonly Waveform[]>;
 }
 
 export interface MeasureRequest {
@@ -49,7 +57,13 @@ export interface Quantity {
   readonly symbol: string;
   /** Printed after the number; empty for dimensionless. */
   readonly unit: string;
-  readonly roles: readonly ('a' | 'b')[];
+  readonly roles: readonly Role[];
+  /** Roles that may be left out; all others are needed. */
+  readonly optionalRoles?: readonly Role[];
+  /** What the waveform of a role may hold; gravitational series where nothing is said. */
+  readonly accepts?: { readonly [role in Role]?: readonly Variable[] };
+  /** Where a quantity takes fewer words of a setting than the settings table lists. */
+  readonly choices?: { readonly [name in SettingName]?: readonly string[] };
   readonly needsNoise: boolean;
   readonly settings: readonly SettingName[];
   /** Settings that have no default for this quantity given these inputs. */

@@ -23,7 +23,7 @@ export interface ModeSet {
   readonly modes: readonly Mode[];
 }
 
-/** Strain along one line of sight: plus and cross, no harmonics. `cross` is null when the file has none. */
+/** Strain along one line of sight: plus and cross, no harmonics. `cross` is null when the file has none. A luminosity in erg/s is kept as `plus`, told by the variable. */
 export interface LineOfSight {
   readonly kind: 'line-of-sight';
   readonly plus: Float64Array;
@@ -66,6 +66,16 @@ export interface Waveform {
   readonly ownDistanceMpc: number | null;
   readonly junkEndM: number | null;
   readonly binary: BinaryFacts;
+  /** Name shared by the resolutions or radii of one simulation. */
+  readonly series?: string;
+  /** Grid spacing in M. */
+  readonly resolution?: number;
+  readonly extractionRadiusM?: number;
+  /** Areal where the sheet does not say. */
+  readonly radiusType?: 'areal' | 'isotropic' | 'coordinate';
+  readonly timeLabel?: 'retarded' | 'coordinate';
+  /** Tetrad of φ₂; symmetric where the sheet does not say. */
+  readonly tetrad?: 'symmetric' | 'kinnersley';
   /** Significant digits printed in the file's amplitude columns; null when not text. For the rounding component. */
   readonly significantDigits: number | null;
 }

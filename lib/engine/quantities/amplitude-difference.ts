@@ -19,6 +19,7 @@ export const amplitudeDifference: Quantity = {
   roles: ['a', 'b'],
   needsNoise: false,
   settings: ['modes', 'alignment', 'window', 'at', 'startM', 'integrationFloor'],
+  choices: { at: ['peak', 'end', 'window', 'maximum', 'timeM', 'frequencyM'] },
   required: () => [],
   sweepable: ['at'],
   scale: 'absolute',

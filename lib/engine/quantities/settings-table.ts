@@ -1,5 +1,5 @@
-import { houseRecoilMass, houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
-import type { SettingName } from '@/lib/engine/contract/settings';
+import { houseMatchThreshold, houseRecoilMass, houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
+import { observables, publishedFits, type SettingName } from '@/lib/engine/contract/settings';
 
 /**
  * Every setting of a claim: type, range, unit, house default and meaning (settings.md section 1
@@ -16,8 +16,8 @@ export type SettingShape =
   | { readonly kind: 'response' }
   | { readonly kind: 'taper'; readonly min: number; readonly max: number }
   | { readonly kind: 'cosmology' }
-  /** A word, or one named number such as {"timeM": 100}; `swept` names the number that a sweep goes over. */
-  | { readonly kind: 'place'; readonly options: readonly string[]; readonly numbers: readonly { readonly name: string; readonly above?: number }[]; readonly swept?: string };
+  /** A word, one named number such as {"timeM": 100}, or a flag such as {"ringdown": true}; `swept` names the number that a sweep goes over. */
+  | { readonly kind: 'place'; readonly options: readonly string[]; readonly numbers: readonly { readonly name: string; readonly above?: number }[]; readonly flags?: readonly string[]; readonly swept?: string };
 
 export interface SettingRow {
   readonly name: SettingName;
@@ -56,18 +56,33 @@ const rows: readonly SettingRow[] = [
   row('detectors', { kind: 'integer', min: 1, max: 10 }, '', said('detectors'), 'Equal detectors in one place: loudness times √N.'),
   row('armAngleDeg', { kind: 'number', min: 1, max: 90 }, '°', said('armAngleDeg'), 'Opening angle of the detector’s arms.'),
   row('taper', { kind: 'taper', min: 0.1, max: 10 }, '', `${said('taper')} (1)`, 'Multiplies both ramp lengths of the taper.'),
-  row('threshold', { kind: 'number', above: 0 }, '', `${said('threshold')} for loudness`, 'The loudness, or the match, at which something counts as seen.'),
+  row('threshold', { kind: 'number', above: 0 }, '', `${said('threshold')} for loudness, ${houseMatchThreshold} for a detectable fraction`, 'The loudness, or the match, at which something counts as seen.'),
   row('cosmology', { kind: 'cosmology' }, '', `h0 ${h0} km/s/Mpc, omegaM ${omegaM}, flat`, 'Expansion used between redshift and distance.'),
-  row('startM', { kind: 'number' }, 'M', 'the end of the start-up burst, else the first sample', 'Start of integrals over time.'),
+  row('startM', { kind: 'number' }, 'M', 'the declared end of the start-up burst, else the first sample', 'Start of integrals over time.'),
   row('window', { kind: 'interval' }, 'M', `for a ringdown [${ringdownWindow.join(', ')}] after the peak; for an alignment from 10 % to 40 % of the way from the later start to the peak of the first record`, 'Interval of time that is used: counted from the peak for a ringdown, on the first record’s own times for an alignment.'),
   row('alignment', { kind: 'place', options: ['window', 'peak', 'none'], numbers: [{ name: 'frequencyM', above: 0 }] }, '', said('alignment'), 'How the second record is laid over the first in time and phase: over the window, at the peaks, where both reach a frequency (rad/M), or not at all.'),
-  row('at', { kind: 'place', options: ['peak', 'end', 'window', 'maximum'], numbers: [{ name: 'timeM' }, { name: 'frequencyM', above: 0 }], swept: 'timeM' }, 'M', said('at'), 'Where the difference is read: at the peak or the end of the first record, as a mean over the window, where it is largest, at a time, or where the first record reaches a frequency (rad/M).'),
+  row('at', { kind: 'place', options: ['peak', 'end', 'window', 'maximum'], numbers: [{ name: 'timeM' }, { name: 'frequencyM', above: 0 }], flags: ['ringdown'], swept: 'timeM' }, 'M', `${said('at')}; {"ringdown": true} for an electromagnetic frequency`, 'Where a curve is read: at the peak or the end of the first record, as a mean over the window, where it is largest, at a time, or where the first record reaches a frequency (rad/M); for an electromagnetic frequency also the value of the ringdown.'),
   row('integrationFloor', { kind: 'number', above: 0 }, 'rad/M', 'half of ω₂₂ at the start', 'Lowest frequency by which a time integral divides.'),
   row('includeEnergyBeforeStart', { kind: 'choice', options: [false, true, 'removed'] }, '', said('includeEnergyBeforeStart'), 'Adds what was radiated before the start.'),
   row('normaliseBy', { kind: 'choice', options: ['M', 'adm', 'remnant'] }, '', `${said('normaliseBy')}; ${houseRecoilMass} for recoil`, 'The mass to which the number is referred.'),
   row('parameters', { kind: 'integer', min: 1, max: 20 }, '', said('parameters'), 'Number of parameters in the criterion.'),
   row('rateLaw', { kind: 'choice', options: ['euclidean', 'comoving'] }, '', said('rateLaw'), 'How loudness becomes volume.'),
   row('templateMassRange', { kind: 'interval', min: 0.01, max: 100 }, '× M', said('templateMassRange'), 'Range of the template’s mass when it is maximised over.'),
+  row('joinHz', { kind: 'number', above: 0 }, 'Hz', 'required', 'Frequency at which the post-Newtonian amplitude ends and the numerical one begins.'),
+  row('amplitudeOrder', { kind: 'integer', min: 0, max: 1 }, '', said('amplitudeOrder'), 'Order of the post-Newtonian amplitude: 0 restricted, 1 with the first correction.'),
+  row('formalOrder', { kind: 'number', above: 0, max: 20 }, '', 'measured from three runs', 'Order of convergence that is taken instead of the measured one.'),
+  row('extrapolationOrder', { kind: 'integer', min: 1, max: 4 }, '', said('extrapolationOrder'), 'Degree of the polynomial in 1/r.'),
+  row('weight', { kind: 'choice', options: ['plane', 'diagonal', 'plane-volume', 'diagonal-volume'] }, '', said('weight'), 'Measure over spins: both uniform and independent, equal spins uniform, or either times the volume in which the signal is heard.'),
+  row('statistic', { kind: 'choice', options: ['minimum', 'mean', 'weighted'] }, '', said('statistic'), 'Which number stands for all azimuths: the least match, the mean, or the mean weighted by loudness.'),
+  row('observable', { kind: 'choice', options: observables }, '', 'mass for a fit, dominant for an order, radiated-energy for an extrapolation', 'What is fitted, compared or extrapolated.'),
+  row('method', { kind: 'choice', options: ['balance-adm', 'balance-pn', 'ringdown'] }, '', 'balance-adm when the initial energy is stated, else balance-pn', 'How the remnant is found: what was there less what left, from the stated or the post-Newtonian start, or from its ringing.'),
+  row('fit', { kind: 'choice', options: publishedFits }, '', `${said('fit')} of the fits that apply`, 'Which published fit is evaluated.'),
+  row('fieldGauss', { kind: 'number', min: 1, max: 1e18 }, 'G', 'as computed; nothing is rescaled', 'Magnetic field to which electromagnetic energy is rescaled.'),
+  row('plasmaDensityCm3', { kind: 'number', min: 1e-6, max: 1e12 }, 'cm⁻³', said('plasmaDensityCm3'), 'Electrons in each cubic centimetre of the plasma that the waves meet.'),
+  row('radiativeEfficiency', { kind: 'number', min: 0, max: 1 }, '', 'none', 'Share of the accreted rest energy that is radiated.'),
+  row('accretionRateMsunPerYear', { kind: 'number', above: 0 }, 'M☉/yr', 'none', 'Rate at which the disc feeds the hole.'),
+  row('internalEnergyErg', { kind: 'number', above: 0 }, 'erg', 'none', 'Internal energy of the gas, for its cooling time.'),
+  row('radiusM', { kind: 'number', above: 0 }, 'M', 'none', 'Radius at which the dynamical time is taken.'),
   row('massRatio', { kind: 'number', above: 0, max: 1e6 }, '', 'the waveform’s own', 'Heavier over lighter mass, q ≥ 1.'),
   row('chi1z', { kind: 'number', min: -1, max: 1 }, '', 'the waveform’s own', 'Spin of the heavier body along the orbital angular momentum.'),
   row('chi2z', { kind: 'number', min: -1, max: 1 }, '', 'the waveform’s own', 'Spin of the lighter body along the orbital angular momentum.'),

@@ -1,3 +1,4 @@
+import type { Role } from '@/lib/engine/contract/quantity';
 import type { SettingName } from '@/lib/engine/contract/settings';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
 
@@ -6,7 +7,7 @@ export interface QuantityRow {
   readonly id: string;
   readonly title: string;
   readonly unit: string;
-  readonly roles: readonly ('a' | 'b')[];
+  readonly roles: readonly Role[];
   readonly needsNoise: boolean;
   readonly settings: readonly SettingRow[];
   readonly sweepable: readonly SettingName[];
