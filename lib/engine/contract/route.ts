@@ -67,6 +67,40 @@ export interface MatchRequest {
   readonly rescale: (b: Side, factor: number) => Side;
 }
 
+/** A direction from which modes are looked at. */
+export interface Sight {
+  readonly inclinationRad: number;
+  readonly azimuthRad: number;
+}
+
+/** The best match of b with a seen from one sight. */
+export interface SightMatch {
+  readonly match: number;
+  /** ρ² of a from there, both polarisations. */
+  readonly powerA: number;
+  /** Whence b is seen at the maximum, and by how much it was moved (later > 0). */
+  readonly b: Sight;
+  readonly timeShiftS: number;
+}
+
+/** Products of the modes of two waveforms taken once, for any number of sights. */
+export interface SightMatcher {
+  /** The maximum over what the request leaves free; where nothing moves b it is seen from a's sight. */
+  readonly best: (a: Sight) => SightMatch;
+  /** The same near a shift and with b's sight held. */
+  readonly held: (a: Sight, at: SightMatch) => SightMatch;
+}
+
+/** `complex` matches from many sights: what may be free, and whether all sights have one inclination. */
+export interface SightRequest {
+  readonly a: Side;
+  readonly b: Side;
+  readonly band: Band;
+  readonly maximise: readonly MaximiseOver[];
+  /** Null when sights of every inclination will be asked for. */
+  readonly inclinationRad: number | null;
+}
+
 /**
  * What a route can do. Routes A and B implement this by different numerics: they share the
  * parsed samples, the closed forms (harmonics, noise rule, taper window), and nothing else.
@@ -76,6 +110,10 @@ export interface DetectorRoute {
   readonly gram: (side: Side, band: Band) => ResponseGram;
   /** Many lines of sight at once, for averages over the sphere; where absent, `gram` is asked for each. */
   readonly grams?: (side: Side, band: Band, sights: readonly { readonly inclinationRad: number; readonly azimuthRad: number }[]) => readonly ResponseGram[];
+  /** `complex` matches from many sights with the modes' products taken once. */
+  readonly sights: (request: SightRequest) => SightMatcher;
+  /** 4∫A²/S df of an amplitude known in closed form, in 1/Hz. */
+  readonly powerOf: (amplitude: (fHz: number) => number, band: Band) => number;
   /** Σ over modes of 2∫_{−∞}^{∞}|h̃_ℓm|²/S(|f|) df, band-limited in |f|, in strain units (rule 2.8); modes only. */
   readonly modePower: (side: Side, band: Band) => number;
   readonly overlap: (a: Side, b: Side, band: Band, response: Response) => number;

@@ -2,6 +2,7 @@ import type { Quantity } from '../contract/quantity';
 import { amplitudeDifference } from './amplitude-difference';
 import { distinguishabilitySnr } from './distinguishability-snr';
 import { horizonDistance } from './horizon-distance';
+import { horizonRedshift } from './horizon-redshift';
 import { match } from './match';
 import { mismatch } from './mismatch';
 import { overlap } from './overlap';
@@ -18,5 +19,5 @@ import { volumeRatio } from './volume-ratio';
 
 /** The one table of what can be claimed; a quantity that is not in it is refused by name. */
 export const quantities: ReadonlyMap<string, Quantity> = new Map(
-  [overlap, match, mismatch, distinguishabilitySnr, snr, snrRatio, volumeRatio, horizonDistance, radiatedEnergy, radiatedAngularMomentum, peakLuminosity, recoil, ringdownFrequency, ringdownDamping, phaseDifference, amplitudeDifference].map((quantity) => [quantity.id, quantity]),
+  [overlap, match, mismatch, distinguishabilitySnr, snr, snrRatio, volumeRatio, horizonDistance, horizonRedshift, radiatedEnergy, radiatedAngularMomentum, peakLuminosity, recoil, ringdownFrequency, ringdownDamping, phaseDifference, amplitudeDifference].map((quantity) => [quantity.id, quantity]),
 );

@@ -22,6 +22,7 @@ export interface Evaluated {
   readonly outcome?: MatchOutcome;
   /** Redshift at which a horizon was found. */
   readonly redshift?: number;
+  readonly distanceMpc?: number;
   readonly roots?: readonly number[];
 }
 

@@ -9,6 +9,8 @@ import { houseNumerics, type Numerics } from './numerics';
 import { prepare, type Prepared } from './prepare';
 import type { Content } from './side-spectra';
 import type { Spectrum } from './spectrum';
+import { sightMatcher } from './sight-matcher';
+import { closedFormPower } from './closed-form-power';
 import { SpectrumStore } from './spectrum-store';
 import type { BinWeights } from './bin-weights';
 
@@ -151,6 +153,8 @@ export function createRouteA(numerics: Numerics = houseNumerics, store: Spectrum
     name: 'A',
     gram: (side, band) => lineGram(side, band, store, numerics),
     grams: (side, band, sights) => grams(side, band, sights, store, numerics),
+    sights: (request) => sightMatcher(request, store, numerics),
+    powerOf: closedFormPower,
     modePower: (side, band) => modePower(side, band, store, numerics),
     overlap,
     match: (request) => outcomeOf(request, store, numerics),

@@ -1,11 +1,12 @@
 import type { Band, DetectorRoute, ResponseGram, Side } from '../../contract/route';
 import type { Response } from '../../contract/settings';
 import { channelsOf, normSquared } from './channels';
-import { DEFAULT_GOAL } from './frequency-panels';
+import { DEFAULT_GOAL, frequencyNodes } from './frequency-panels';
 import { frequencySource } from './frequency-source';
 import { alignedResidual, bestMatch } from './best-match';
 import { modeGram, type Sight } from './mode-gram';
 import { nodesFor } from './shared-nodes';
+import { sightMatcher } from './sight-matcher';
 import type { RouteBKnobs, Source } from './spectrum';
 import { timeSource } from './time-source';
 
@@ -38,6 +39,14 @@ function grams(side: Side, band: Band, sights: readonly Sight[], knobs: RouteBKn
   return sights.map(modeGram(source.modes(nodes.f), nodes.weight));
 }
 
+/** Panels as short as if the amplitude came and went within two cycles of the lower edge: then its power law is smooth on each. */
+const CLOSED_FORM_CYCLES = 2;
+
+function closedFormPower(amplitude: (fHz: number) => number, band: Band, goal: number): number {
+  const { f, weight } = frequencyNodes(band, band.fHighHz, CLOSED_FORM_CYCLES / band.fLowHz, goal);
+  return 4 * f.reduce((sum, at, i) => sum + weight[i]! * amplitude(at) ** 2, 0);
+}
+
 function modePower(side: Side, band: Band, knobs: RouteBKnobs): number {
   if (side.waveform.content.kind !== 'modes') return Number.NaN;
   const source = sourceOf(side, knobs);
@@ -65,6 +74,8 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
     name: 'B',
     gram: (side, band) => gram(side, band, knobs),
     grams: (side, band, sights) => grams(side, band, sights, knobs),
+    sights: (request) => sightMatcher(request, source, knobs),
+    powerOf: (amplitude, band) => closedFormPower(amplitude, band, knobs.quadrature),
     modePower: (side, band) => modePower(side, band, knobs),
     overlap,
     match: (request) => bestMatch(request, source, knobs),
