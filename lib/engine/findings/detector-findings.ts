@@ -5,10 +5,12 @@
 import { houseValues } from '@/lib/engine/contract/house-values';
 import type { DetectorPoint } from '@/lib/engine/conditioning/detector-settings';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
+import { dominantMode } from '@/lib/engine/conditioning/dominant-mode';
 import { nyquistFrequency } from '@/lib/engine/conditioning/nyquist-frequency';
 import type { Finding, FindingLevel } from '@/lib/engine/contract/finding';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Side } from '@/lib/engine/contract/route';
+import { lateDecay } from './late-decay';
 
 /** Three significant digits, without trailing noise. */
 export const short = (x: number, digits = 3): string => String(Number(x.toPrecision(digits)));
@@ -228,6 +230,38 @@ export function bandBeyondSampling(c: ConditionedWaveform, points: readonly Affe
     where: c.given.name,
     text: `${pointsWord(affected)} ${c.given.name} ${carries} up to ${short(topHz(worst))} Hz only, and the claim integrates to ${short(worst.point.declared.fHighHz!, 6)} Hz. What lies above counts as zero.`,
     fix: `Lower fHighHz to ${short(topHz(worst))} Hz, or attach a finer record.`,
+  };
+}
+
+const FEW_SAMPLES = 4;
+
+/** The ringdown of the loudest mode in use: cycles per unit of the axis, and the highest frequency that the samples there carry. */
+function ringOf(c: ConditionedWaveform, lMax: number | null): { readonly frequency: number; readonly carried: number } | null {
+  const { content, axis, domain } = c.used(lMax);
+  if (domain !== 'time') return null;
+  const loudest = content.kind === 'modes' ? dominantMode(content.modes) : undefined;
+  const sight = content.kind === 'line-of-sight' && content.cross !== null ? { re: content.plus, im: content.cross } : undefined;
+  const series = loudest ?? sight;
+  const decay = series === undefined ? null : lateDecay(axis, series.re, series.im);
+  if (decay?.turning == null) return null;
+  const i = decay.peakIndex;
+  return { frequency: decay.turning / (2 * Math.PI), carried: 0.5 / (axis[i + 1]! - axis[i]!) };
+}
+
+/** V05: a ringdown inside the band with fewer than four samples to its period. */
+export function ringBeyondSampling(c: ConditionedWaveform, points: readonly Affected[]): Finding | null {
+  const ring = ringOf(c, points[0]?.point.declared.lMax ?? null);
+  if (ring === null || ring.frequency * FEW_SAMPLES <= 2 * ring.carried) return null;
+  const inBand = points.filter(({ point, side }) => ring.frequency / side.secondsPerUnit > point.band.fLowHz);
+  const worst = inBand.reduce<Affected | undefined>((p, q) => (p === undefined || q.side.secondsPerUnit < p.side.secondsPerUnit ? q : p), undefined);
+  if (worst === undefined) return null;
+  const { secondsPerUnit } = worst.side;
+  return {
+    code: 'engine/band-beyond-sampling',
+    level: 'worth-a-look',
+    where: c.given.name,
+    text: `${pointsWord(inBand)} the ringdown of ${c.given.name} is at ${short(ring.frequency / secondsPerUnit)} Hz, and its samples carry frequencies to ${short(ring.carried / secondsPerUnit)} Hz: ${short((2 * ring.carried) / ring.frequency, 2)} samples to a period. What the ringdown adds is uncertain.`,
+    fix: 'Attach the record with a smaller step around the merger.',
   };
 }
 

@@ -18,11 +18,11 @@ function shareBeyond(axis: Float64Array, { re, im }: Mode, rate: number): number
   return power(n - 1) / (2 * rate) / total;
 }
 
-function shortRecord(axis: Float64Array, mode: Mode, { peakIndex, endShare, rate }: LateDecay, name: string, noun: string): Finding[] {
+function shortRecord(axis: Float64Array, mode: Mode, { peakIndex, endShare, rate }: LateDecay, name: string): Finding[] {
   const after = axis[axis.length - 1]! - axis[peakIndex]!;
   if (!(endShare > OVER) || (rate !== null && after * rate >= DAMPING_TIMES)) return [];
   const times = rate === null ? '' : ` (${short(after * rate, 2)} damping times)`;
-  const missing = rate === null ? '' : `; about ${percent(shareBeyond(axis, mode, rate), 1)} of the ${noun} lies beyond`;
+  const missing = rate === null ? '' : `; about ${percent(shareBeyond(axis, mode, rate), 1)} of its power lies beyond`;
   return [
     {
       code: 'engine/short-ringdown',
@@ -47,9 +47,9 @@ function noiseFloor(mode: Mode, { floor }: LateDecay, name: string): Finding[] {
   ];
 }
 
-/** V11 and V12 for what is integrated to the end of the record: Ḣ of the modes in use, in M. `noun` names what would be missing. */
-export function lateFindings(axis: Float64Array, news: readonly Mode[], name: string, noun: string): Finding[] {
+/** V11 and V12 for what is integrated to the end of the record: Ḣ of the modes in use, in M. */
+export function lateFindings(axis: Float64Array, news: readonly Mode[], name: string): Finding[] {
   const mode = dominantMode(news);
   const decay = mode && lateDecay(axis, mode.re, mode.im);
-  return mode && decay ? [...shortRecord(axis, mode, decay, name, noun), ...noiseFloor(mode, decay, name)] : [];
+  return mode && decay ? [...shortRecord(axis, mode, decay, name), ...noiseFloor(mode, decay, name)] : [];
 }

@@ -4,6 +4,7 @@ import { Cancelled, notComputable, type MeasureRequest, type Watch } from '../co
 import type { Waveform } from '../contract/waveform';
 import { completeModes, type CompletedModes } from '../conditioning/complete-modes';
 import { energyOnSamples } from './energy-on-samples';
+import { fluxFindings } from './flux-findings';
 import { preparerOf, stop, type At, type PreparedPoint } from './prepare-radiated';
 import { combinedU, computationUncertainty, radiationBudget } from './radiation-budget';
 import { burstFindings, samplingFindings } from './radiation-findings';
@@ -61,6 +62,7 @@ function findingsOf({ request, recipe, completed, store }: Task, point: Prepared
   const radiation = store.fine(record, settings);
   return [
     ...recipe.findings({ completed, point, outcome, store, startDeclared }),
+    ...fluxFindings({ given: request.inputs.of.a!, record, radiation, toTheEnd: recipe.atOneTime !== true }),
     ...samplingFindings(record, energyOnSamples(radiation, settings.startM), name),
     ...burstFindings(radiation, settings.startM, completed.waveform, startDeclared),
   ];

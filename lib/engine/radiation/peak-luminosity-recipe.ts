@@ -71,6 +71,7 @@ export const peakLuminosityRecipe: RadiationRecipe = {
   settings: ['modes', 'lMax', 'startM', 'integrationFloor'],
   normaliseBy: houseValues.normaliseBy,
   withStrain: false,
+  atOneTime: true,
   byRouteA: (point, store, turned) => outcomeOf(peakOnSamples(sampledAs(store, point, turned), point.settings.startM, turned.order)),
   byRouteB: ({ record, settings: { startM, floor } }) => outcomeOf(peakOnPanels(radiationOnPanels(record, startM, floor ?? NO_FLOOR, false), startM, record.axis)),
   rounding,

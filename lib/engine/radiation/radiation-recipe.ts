@@ -83,6 +83,8 @@ export interface RadiationRecipe {
   readonly rounding: (point: PreparedPoint, store: SampledStore, digits: number | null, outcome: Outcome) => number;
   /** Does each ℓ multiply its neighbours, so that symmetry silences none? */
   readonly couplesEll?: true;
+  /** Read at one time: how the record ends does not enter. */
+  readonly atOneTime?: true;
   /** Ascending in ℓ. */
   readonly shares: (point: PreparedPoint, store: SampledStore, outcome: Outcome) => EllShare[];
   /** Components that mean nothing within the uncertainty become null. */

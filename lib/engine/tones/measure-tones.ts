@@ -1,8 +1,12 @@
 import { routeBIndices, worstIndex } from '../budget/chosen-points';
+import { dominantMode } from '../conditioning/dominant-mode';
 import { expandedOf } from '../budget/total';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Figure, MeasuredPoint, Measurement, UsedSetting } from '../contract/measurement';
 import { Cancelled, notComputable, type MeasureRequest, type Watch } from '../contract/quantity';
+import type { ModeIndex } from '../contract/settings';
+import type { Mode } from '../contract/waveform';
+import { recordFindings } from '../findings/record-findings';
 
 export type At = Readonly<Record<string, number>>;
 
@@ -31,6 +35,20 @@ export interface ToneRecipe<P> {
 }
 
 const unique = (findings: readonly Finding[]): Finding[] => findings.filter((f, i) => findings.findIndex((g) => g.text === f.text) === i);
+
+/** What the files of the claim show by themselves, in the modes that it follows. */
+function recordsOf({ inputs, settings }: MeasureRequest): Finding[] {
+  const listed = settings.modes === 'all' ? undefined : settings.modes;
+  return Object.values(inputs.of).flat().flatMap((waveform) => {
+    const followed = listed ?? (waveform.content.kind === 'modes' ? loudestOf(waveform.content.modes) : []);
+    return recordFindings(waveform, (l, m) => followed.some(([p, q]) => p === l && q === m));
+  });
+}
+
+function loudestOf(modes: readonly Mode[]): readonly ModeIndex[] {
+  const loudest = dominantMode(modes);
+  return loudest === undefined ? [] : [[loudest.l, loudest.m]];
+}
 
 /** Counts the steps of a measurement and lets it be cancelled between them. */
 function stepper(watch: Watch, steps: number): (doing: string) => void {
@@ -68,7 +86,7 @@ export function measureTones<P extends object>(request: MeasureRequest, watch: W
   if (stops.length > 0) return notComputable(unique(stops), ats);
   const readings = byA as readonly Reading[];
   const worst = worstIndex(readings.map(({ value }) => value), request.claimed, recipe.tolerance);
-  const findings = unique(recipe.findings(ready[worst]!));
+  const findings = unique([...recipe.findings(ready[worst]!), ...recordsOf(request)]);
   if (findings.some(({ level }) => level === 'stops-lodging')) return notComputable(findings, ats);
   if (request.routeAOnly) return looked(ats, readings, findings);
   const routeBPoints = routeBIndices(ready.length, worst);

@@ -4,6 +4,7 @@ import type { Finding } from '@/lib/engine/contract/finding';
 import type { MeasureRequest } from '@/lib/engine/contract/quantity';
 import type { Side } from '@/lib/engine/contract/route';
 import * as look from '@/lib/engine/findings/detector-findings';
+import { recordFindings } from '@/lib/engine/findings/record-findings';
 import { evenLines, MOST_EVEN_LINES } from '@/lib/engine/routes/a/bin-plan';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
@@ -199,6 +200,12 @@ function blindResponse({ requests, kitA }: Walk): Finding[] {
   });
 }
 
+/** What a file shows by itself, in the modes in use. */
+function recordsOf(c: ConditionedWaveform, lMax: number | null): Finding[] {
+  const { content } = c.used(lMax);
+  return recordFindings(c.given, (l, m) => content.kind === 'modes' && content.modes.some((mode) => mode.l === l && mode.m === m));
+}
+
 /** Findings that do not stop, over all points, each once with the points it concerns. */
 export function findingsOf(quantity: DetectorQuantity, requests: readonly PointRequest[], found: readonly Evaluated[] | null): Finding[] {
   const points = requests.map((request, i) => (found === null ? detectorPoint(request) : quantity.recipe.shownPoint(request, found[i]!)));
@@ -213,6 +220,8 @@ export function findingsOf(quantity: DetectorQuantity, requests: readonly PointR
       look.signalStartsInBand(c, affected, level),
       look.taperRoom(c, affected),
       look.bandBeyondSampling(c, affected),
+      look.ringBeyondSampling(c, affected),
+      ...recordsOf(c, points[0]!.declared.lMax ?? null),
     ];
   });
   const roots = (found ?? []).map((here, i) =>
