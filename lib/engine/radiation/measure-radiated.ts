@@ -55,6 +55,8 @@ interface Task {
   readonly store: SampledStore;
 }
 
+const noNumber = ({ recipe, completed }: Task): Finding => (recipe.noNumber ?? noStart)(completed.waveform.name);
+
 function findingsOf({ request, recipe, completed, store }: Task, point: PreparedPoint, outcome: Outcome): Finding[] {
   const { settings, record } = point;
   const { name } = completed.waveform;
@@ -76,7 +78,7 @@ function looked(task: Task): Measurement {
   for (const point of points) {
     step('route A');
     const outcome = recipe.byRouteA(point, store, house);
-    if (outcome === null) return notComputable([noStart(completed.waveform.name)], ats);
+    if (outcome === null) return notComputable([noNumber(task)], ats);
     found.push(outcome);
   }
   const findings = findingsOf(task, points[0]!, found[0]!);
@@ -103,7 +105,7 @@ function measurePoints(task: Task): Measurement {
   const { name, significantDigits: digits } = completed.waveform;
   const step = stepper(watch, points.length + Math.min(points.length, 11) + 1);
   const byA = allByRouteA(task, step);
-  if (byA === null) return notComputable([noStart(name)], ats);
+  if (byA === null) return notComputable([noNumber(task)], ats);
   const worst = worstIndex(byA.map(({ outcome }) => outcome.value), request.claimed);
   const point = points[worst]!;
   const { outcome } = byA[worst]!;
@@ -120,7 +122,7 @@ function measurePoints(task: Task): Measurement {
     points: points.map((each, i) => ({ ...measuredPoint(recipe, each, byA[i]!, byB.get(i) ?? null), ...ownFloor(request, points, each) })),
     budget: radiationBudget({ recipe, point, store, digits }, outcome),
     findings,
-    ...settingsUsed(point.settings, request, completed.waveform, point.record, recipe.settings),
+    ...settingsUsed(point.settings, request, completed.waveform, point.record, recipe.settings, recipe.rows?.(point)),
     routeBPoints,
     figures: request.withFigures ? recipe.figures(point, store, name) : [],
   };

@@ -133,5 +133,6 @@ export function radiationBudget(measuring: Measuring, here: Outcome): BudgetLine
     startLine(point, elsewhere),
     ...floorLine(point, elsewhere),
     modesLine(recipe.shares(point, store, here), recipe),
+    ...(recipe.coverage?.(point, store) ?? []),
   ];
 }

@@ -1,11 +1,12 @@
 import type { Finding } from '../contract/finding';
-import type { Figure } from '../contract/measurement';
+import type { BudgetLine, Figure } from '../contract/measurement';
 import type { SettingName } from '../contract/settings';
 import type { CompletedModes } from '../conditioning/complete-modes';
 import { coarserSamples, houseSamples, radiationOnSamples, type SampledRadiation } from './news-on-samples';
 import type { PreparedPoint } from './prepare-radiated';
 import type { RadiationRecord } from './radiation-record';
 import type { RadiationSettings } from './radiation-settings';
+import type { UsedRow } from '../tones/used-rows';
 
 /** What one route says at one point, in the quantity's unit. */
 export interface Outcome {
@@ -87,6 +88,12 @@ export interface RadiationRecipe {
   readonly atOneTime?: true;
   /** Ascending in ℓ. */
   readonly shares: (point: PreparedPoint, store: SampledStore, outcome: Outcome) => EllShare[];
+  /** Settings beyond those of the family, for the reader. */
+  readonly rows?: (point: PreparedPoint) => readonly UsedRow[];
+  /** Coverage lines beyond those of the family. */
+  readonly coverage?: (point: PreparedPoint, store: SampledStore) => readonly BudgetLine[];
+  /** Why there is no number where `byRouteA` gives null; else the start of an addition is named. */
+  readonly noNumber?: (name: string) => Finding;
   /** Components that mean nothing within the uncertainty become null. */
   readonly settle?: (outcome: Outcome, expanded: number) => Outcome['components'];
   readonly findings: (context: FindingContext) => Finding[];

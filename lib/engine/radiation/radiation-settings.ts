@@ -86,8 +86,8 @@ function rowsOf(used: RadiationSettings, waveform: Waveform, record: RadiationRe
  * Fails:  never.
  * Source: settings.md section 1 (the mark ●).
  */
-export function settingsUsed(used: RadiationSettings, request: MeasureRequest, waveform: Waveform, record: RadiationRecord, allowed: readonly SettingName[]): { settings: UsedSetting[]; assumed: string[] } {
-  const rows = rowsOf(used, waveform, record).filter(({ name }) => allowed.includes(name));
+export function settingsUsed(used: RadiationSettings, request: MeasureRequest, waveform: Waveform, record: RadiationRecord, allowed: readonly SettingName[], more: readonly Row[] = []): { settings: UsedSetting[]; assumed: string[] } {
+  const rows = [...rowsOf(used, waveform, record).filter(({ name }) => allowed.includes(name)), ...more];
   const { settings: declared, over } = request;
   const standing = (name: SettingName): UsedSetting['standing'] => (name === over?.setting ? 'swept' : declared[name] === undefined ? 'assumed' : 'declared');
   const settings = rows.map(({ name, value, unit }): UsedSetting => ({ name, value, standing: standing(name), ...(unit === undefined ? {} : { unit }) }));
