@@ -5,6 +5,7 @@
 import type { ClaimHeading, ClaimedPoint } from '@/app/_ui/claim/record-view';
 import { headingOf } from '@/app/_ui/claim/claim-heading';
 import { parseClaimed } from '@/lib/claims/claimed';
+import { unitOf } from '@/lib/engine/contract/quantity';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { quantities } from '@/lib/engine/quantities/registry';
 import type { ResultClaim } from '@/lib/pipeline/result';
@@ -77,7 +78,7 @@ export function headingsOfSheet(sheet: SheetParts): readonly ClaimHeading[] {
     const id = text(claim['id']) ?? `C${i + 1}`;
     const name = text(claim['quantity']) ?? 'quantity not chosen';
     const quantity = quantities.get(name) ?? null;
-    const empty: ResultClaim = { id, quantity: name, unit: quantity?.unit ?? '', verdict: 'not-computable', remarks: [], coverage: { state: 'unknown' }, points: [], budget: [], assumed: [], settings: [], routeB: [], findings: [], candidates: [] };
+    const empty: ResultClaim = { id, quantity: name, unit: quantity ? unitOf(quantity, isLoose(claim['settings']) ? claim['settings'] : {}) : '', verdict: 'not-computable', remarks: [], coverage: { state: 'unknown' }, points: [], budget: [], assumed: [], settings: [], routeB: [], findings: [], candidates: [] };
     return { ...headingOf(empty, quantity, wordsOf(claim, sheet)), points: pointsOf(claim, quantity?.scale === 'ln') };
   });
 }

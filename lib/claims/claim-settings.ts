@@ -24,9 +24,21 @@ export function parseSettings(raw: Readonly<Record<string, unknown>>, quantity: 
       settings[name] = parsed;
     }
   }
+  problems.push(...unfollowed(settings, quantity, path));
   const { fLowHz, fHighHz } = settings as DeclaredSettings;
   if (fLowHz !== undefined && fHighHz !== undefined && !(fHighHz > fLowHz)) problems.push(bandOrder(fHighHz, fLowHz, [...path, 'fHighHz']));
   return settings;
+}
+
+/** Allowed for the quantity, but without meaning beside the word of another setting. */
+function unfollowed(settings: Readonly<Record<string, unknown>>, quantity: Quantity, path: Path): Problem[] {
+  const { follows } = quantity;
+  if (!follows) return [];
+  const word = String(settings[follows.setting] ?? follows.houseDefault);
+  const meant: readonly string[] = follows.words[word]?.settings ?? quantity.settings;
+  return Object.keys(settings)
+    .filter((name) => !meant.includes(name))
+    .map((name) => ({ code: 'claims/setting-not-for-quantity', where: pointer(...path, name), saw: `the setting "${name}"`, expected: `a setting of ${quantity.id} with ${follows.setting} "${word}": ${meant.join(', ')}` }));
 }
 
 const bandOrder = (high: number, low: number, path: Path): Problem => ({ code: 'claims/out-of-range', where: pointer(...path), saw: `an upper edge of ${high} Hz with a lower edge of ${low} Hz`, expected: 'fHighHz above fLowHz' });

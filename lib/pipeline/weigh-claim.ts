@@ -1,11 +1,15 @@
 import type { Claim } from '@/lib/claims/claim';
 import type { Claimed } from '@/lib/claims/claimed';
 import type { BudgetLine, MeasuredPoint, Measurement, UsedSetting } from '@/lib/engine/contract/measurement';
+import { physicalRange } from '@/lib/engine/budget/physical-range';
+import { totalOf } from '@/lib/engine/budget/total';
 import type { Finding } from '@/lib/engine/contract/finding';
+import type { Sensitivity } from '@/lib/engine/contract/sensitivity';
+import { unitOf } from '@/lib/engine/contract/quantity';
 import { coverageOf } from '@/lib/verdicts/coverage';
 import { remarksOf } from '@/lib/verdicts/remarks';
 import { claimVerdict, decideVerdict, type PointVerdict } from '@/lib/verdicts/verdict';
-import type { ResultClaim, ResultPoint } from './result';
+import type { ResultClaim, ResultPoint, ResultSensitivity, ResultUncertainty } from './result';
 
 interface Weighed {
   readonly claimed: Claimed;
@@ -25,15 +29,20 @@ export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim 
     return [{ claimed, measured, verdict: decideVerdict(weighing) }];
   });
   const worst = points.reduce((far, next) => (farness(next) > farness(far) ? next : far));
+  const uncertainty = uncertaintyOf(claim, worst, measurement);
+  const { metricBound, sensitivities } = measurement;
   return {
     id: claim.id,
     quantity: claim.quantity.id,
-    unit: claim.quantity.unit,
+    unit: unitOf(claim.quantity, claim.settings),
     verdict: claimVerdict(points.map((point) => point.verdict.word)),
-    remarks: remarksOf(points.map(({ claimed, measured, verdict }) => ({ claimed, measured, word: verdict.word })), measurement.budget),
-    coverage: coverageOf(worst.claimed, worst.measured.value, measurement.budget),
+    remarks: remarksOf(points.map(({ claimed, measured, verdict }) => ({ claimed, measured, word: verdict.word })), measurement.budget, uncertainty.data),
+    coverage: coverageOf(worst.claimed, worst.measured.value, measurement.budget, uncertainty.data),
     points: points.map(resultPoint),
     budget: measurement.budget.map(budgetLine),
+    ...(measurement.budget.length > 0 ? { uncertainty } : {}),
+    ...(metricBound ? { metricBound } : {}),
+    ...(sensitivities ? { sensitivities: sensitivities.map((row) => weighedSensitivity(row, claim, worst)) } : {}),
     assumed: [...measurement.assumed],
     settings: measurement.settings.map(usedSetting),
     routeB: [...measurement.routeBPoints],
@@ -63,7 +72,32 @@ function resultPoint({ claimed, measured, verdict }: Weighed): ResultPoint {
   };
 }
 
-const budgetLine = ({ component, id, group, u, note }: BudgetLine): BudgetLine => ({ component, id, group, u: number(u), note });
+const budgetLine = ({ component, id, group, u, note, degreesOfFreedom, share }: BudgetLine): BudgetLine => ({
+  component, id, group, u: number(u), note,
+  ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
+  ...(share === undefined ? {} : { share: number(share) }),
+});
+
+/** The two totals: what the computation alone leaves open, and what the data do. */
+function uncertaintyOf(claim: Claim, { measured: { value } }: Weighed, { budget }: Measurement): ResultUncertainty {
+  const range = physicalRange(claim.quantity.id);
+  const computation = budget.filter(({ group }) => group === 'computation');
+  return { computation: totalOf(value, computation, range), data: totalOf(value, budget, range) };
+}
+
+/** On the scale of the verdict, in units of the tolerance; a bound has none and takes the natural one at the number. */
+function weighedSensitivity(row: Sensitivity, { quantity, settings }: Claim, { measured: { value: here }, verdict }: Weighed): ResultSensitivity {
+  const { setting, standing, unit, used, tried, because } = row;
+  const isLn = quantity.scale === 'ln';
+  const natural = quantity.naturalTolerance(here ?? Number.NaN, settings);
+  const tolerance = verdict.tolerance ?? (isLn ? Math.log1p(natural) : natural);
+  const moved = row.value === null || here === null ? null : isLn ? Math.log(row.value / here) : row.value - here;
+  return {
+    setting, standing, ...(unit === undefined ? {} : { unit }), used, tried,
+    value: number(row.value), change: number(row.change), inTolerances: moved === null ? null : number(moved / tolerance),
+    ...(because === undefined ? {} : { because }),
+  };
+}
 
 const usedSetting = ({ name, value, standing, unit }: UsedSetting): UsedSetting => ({ name, value, standing, ...(unit === undefined ? {} : { unit }) });
 

@@ -47,6 +47,13 @@ export class Cancelled extends Error {
 /** Tolerance on the linear scale, or on ln (a fraction). */
 export type ToleranceScale = 'absolute' | 'ln';
 
+/** What each word of a setting brings along, as data: the form reads it too. */
+export interface Follows {
+  readonly setting: SettingName;
+  readonly houseDefault: string;
+  readonly words: { readonly [word: string]: { readonly unit: string; /** Those that mean something beside this word; all of the quantity's where nothing is said. */ readonly settings?: readonly SettingName[] } };
+}
+
 /**
  * One claim quantity: a row of the one table from which the sheet's schema, the composer's
  * form, the plots and the methods page are drawn. Adding a quantity is one file, one page, one test.
@@ -64,6 +71,8 @@ export interface Quantity {
   readonly accepts?: { readonly [role in Role]?: readonly Variable[] };
   /** Where a quantity takes fewer words of a setting than the settings table lists. */
   readonly choices?: { readonly [name in SettingName]?: readonly string[] };
+  /** Where unit and settings follow the word of another setting; `unit` and `settings` then stand for the house default, and for all words together. */
+  readonly follows?: Follows;
   readonly needsNoise: boolean;
   readonly settings: readonly SettingName[];
   /** Settings that have no default for this quantity given these inputs. */
@@ -76,6 +85,10 @@ export interface Quantity {
   readonly formula: string;
   readonly measure: (request: MeasureRequest, watch: Watch) => Measurement;
 }
+
+/** The unit of a claim with these settings. */
+export const unitOf = ({ unit, follows }: Pick<Quantity, 'unit' | 'follows'>, declared: DeclaredSettings): string =>
+  (follows === undefined ? undefined : follows.words[String(declared[follows.setting] ?? follows.houseDefault)]?.unit) ?? unit;
 
 /** A stop: the quantity cannot be computed; the findings say why. */
 export const notComputable = (findings: readonly Finding[], points: readonly Readonly<Record<string, number>>[]): Measurement => ({
