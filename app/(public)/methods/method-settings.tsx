@@ -2,12 +2,12 @@ import { settingLabel } from '@/app/_ui/claim/setting-names';
 import { Prose } from '@/app/_ui/math/render-markdown';
 import { Table } from '@/app/_ui/primitives/table';
 import type { Quantity } from '@/lib/engine/contract/quantity';
-import { settingsTable } from '@/lib/engine/quantities/settings-table';
+import { settingRows } from '@/lib/engine/quantities/settings-table';
 import { shapeWords } from './setting-shape-words';
 
 /** Drawn from the table by which a sheet is checked and a claim computed; only the last column is written by hand. */
 export function MethodSettings({ quantity, notes }: { readonly quantity: Quantity; readonly notes: ReadonlyMap<string, string> }) {
-  const rows = quantity.settings.flatMap((name) => settingsTable.get(name) ?? []);
+  const rows = settingRows(quantity);
   return (
     <>
       <Table caption={`Settings of ${quantity.title.toLowerCase()}, with type, range and house default`} className="mt-3 min-w-[44rem]">

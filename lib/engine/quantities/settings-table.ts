@@ -1,3 +1,4 @@
+import type { Quantity } from '@/lib/engine/contract/quantity';
 import { houseMatchThreshold, houseRecoilMass, houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
 import { observables, publishedFits, type SettingName } from '@/lib/engine/contract/settings';
 
@@ -89,3 +90,20 @@ const rows: readonly SettingRow[] = [
 ];
 
 export const settingsTable: ReadonlyMap<SettingName, SettingRow> = new Map(rows.map((entry) => [entry.name, entry]));
+
+/** The settings of a quantity, each with the words that it takes. */
+export const settingRows = ({ settings, choices }: Pick<Quantity, 'settings' | 'choices'>): readonly SettingRow[] =>
+  settings.flatMap((name) => {
+    const row = settingsTable.get(name);
+    return row ? [narrowed(row, choices?.[name])] : [];
+  });
+
+/** The words that this quantity takes, where it takes fewer than the setting has. */
+function narrowed(row: SettingRow, choices: readonly string[] | undefined): SettingRow {
+  if (!choices) return row;
+  const kept = (word: string | boolean): boolean => choices.includes(String(word));
+  const { shape } = row;
+  if (shape.kind === 'choice') return { ...row, shape: { ...shape, options: shape.options.filter(kept) } };
+  if (shape.kind === 'place') return { ...row, shape: { ...shape, options: shape.options.filter(kept), numbers: shape.numbers.filter(({ name }) => kept(name)), flags: (shape.flags ?? []).filter(kept) } };
+  return row;
+}

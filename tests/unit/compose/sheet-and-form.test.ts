@@ -22,6 +22,12 @@ describe('the form and the sheet', () => {
     expect(back.claims[0]).toEqual(sheet.claims[0]);
   });
 
+  it('keeps every role of a claim, and a role that nobody knows', () => {
+    const of = { em: 'P', gw: 'G', series: 'U', signals: ['s1', 's2'], templates: ['T0'], other: ['x'] };
+    const sheet = { ...sheetOf('spin-visible'), claims: [{ id: 'C1', quantity: 'detectable-fraction', of, claimed: '0.65' }] };
+    expect(sheetFromFields(fieldsFromSheet(sheet)).claims[0]?.['of']).toEqual(of);
+  });
+
   it('loses no row whose name is empty or taken', () => {
     const fields = { title: '', statement: '', waveforms: [emptyWaveform('A', 'a.txt'), emptyWaveform('A', 'b.txt'), emptyWaveform('', 'c.txt')], noise: [emptyNoise('S')], claims: [] };
     expect(Object.keys(sheetFromFields(fields).waveforms)).toEqual(['A', 'A-2', 'unnamed']);

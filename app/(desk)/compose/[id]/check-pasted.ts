@@ -18,6 +18,8 @@ export function cellProblems(claim: ClaimFields, { catalogue, waveforms, noise }
     quantity: quantity ? null : `“${claim.quantity}” is no quantity; expected one of ${catalogue.map(({ id }) => id).join(', ')}.`,
     a: unlisted(claim.a, waveforms, 'waveform'),
     b: unlisted(claim.b, waveforms, 'waveform'),
+    em: unlisted(claim.em, waveforms, 'waveform'),
+    gw: unlisted(claim.gw, waveforms, 'waveform'),
     noise: unlisted(claim.noise, noise, 'noise curve'),
     claimed: claim.claimed.split(';').map(claimedProblem).find((problem) => problem !== null) ?? null,
     tolerance: claim.tolerance === '' || Number(claim.tolerance) > 0 ? null : `“${claim.tolerance}” is no tolerance; expected a number above zero.`,
@@ -55,7 +57,7 @@ function settingProblem(name: string, typed: string, quantity: QuantityRow): str
 export function asSweep(claims: readonly ClaimFields[], catalogue: readonly QuantityRow[]): ClaimFields | null {
   const [first, ...others] = claims;
   if (!first || others.length === 0) return null;
-  const alike = others.every(({ quantity, a, b, noise, tolerance, overSetting, settings }) => quantity === first.quantity && a === first.a && b === first.b && noise === first.noise && tolerance === first.tolerance && overSetting === '' && Object.keys(settings).length === Object.keys(first.settings).length);
+  const alike = others.every(({ quantity, a, b, em, gw, series, noise, tolerance, overSetting, settings }) => quantity === first.quantity && a === first.a && b === first.b && em === first.em && gw === first.gw && series === first.series && noise === first.noise && tolerance === first.tolerance && overSetting === '' && Object.keys(settings).length === Object.keys(first.settings).length);
   const differing = Object.keys(first.settings).filter((name) => others.some(({ settings }) => settings[name] !== first.settings[name]));
   const [swept] = differing;
   const sweepable: readonly string[] = catalogue.find(({ id }) => id === first.quantity)?.sweepable ?? [];

@@ -7,8 +7,14 @@ type Json = Readonly<Record<string, unknown>>;
 export interface ClaimFields {
   id: string;
   quantity: string;
+  /** Names of waveforms, and of a series; empty where the claim names none. */
   a: string;
   b: string;
+  em: string;
+  gw: string;
+  series: string;
+  signals: string[];
+  templates: string[];
   noise: string;
   /** By setting, as typed; an empty text is undeclared. */
   settings: Record<string, string>;
@@ -18,8 +24,15 @@ export interface ClaimFields {
   /** One value, or one for each swept value with `;` between. See `claimedFrom`. */
   claimed: string;
   tolerance: string;
+  /** Words of `of` that the form does not know; the check tells of them. */
+  otherRoles: Json;
   rest: Json;
 }
+
+const singleNames = ['a', 'b', 'em', 'gw', 'series'] as const;
+const listNames = ['signals', 'templates'] as const;
+export type RoleField = (typeof singleNames)[number] | (typeof listNames)[number];
+export const isListField = (role: RoleField): role is (typeof listNames)[number] => (listNames as readonly RoleField[]).includes(role);
 
 const known = ['id', 'quantity', 'of', 'noise', 'settings', 'over', 'claimed', 'tolerance'];
 const text = (value: unknown): string => (typeof value === 'string' ? value : typeof value === 'number' ? String(value) : '');
@@ -83,8 +96,9 @@ export function fieldsFromClaim(claim: Json): ClaimFields {
   return {
     id: text(claim.id),
     quantity: text(claim.quantity),
-    a: text(of.a),
-    b: text(of.b),
+    ...(Object.fromEntries(singleNames.map((role) => [role, text(of[role])])) as Pick<ClaimFields, (typeof singleNames)[number]>),
+    ...(Object.fromEntries(listNames.map((role) => [role, Array.isArray(of[role]) ? of[role].map(String) : []])) as unknown as Pick<ClaimFields, (typeof listNames)[number]>),
+    otherRoles: Object.fromEntries(Object.entries(of).filter(([role]) => !([...singleNames, ...listNames] as readonly string[]).includes(role))),
     noise: text(claim.noise),
     settings: Object.fromEntries(Object.entries((claim.settings ?? {}) as Json).map(([name, value]) => [name, settingText(value)])),
     overSetting: over?.[0] ?? '',
@@ -107,7 +121,11 @@ export function claimFromFields(fields: ClaimFields): Json {
   return {
     id: fields.id.trim(),
     quantity: fields.quantity,
-    of: { ...(fields.a ? { a: fields.a } : {}), ...(fields.b ? { b: fields.b } : {}) },
+    of: {
+      ...Object.fromEntries(singleNames.flatMap((role) => (fields[role] ? [[role, fields[role]]] : []))),
+      ...Object.fromEntries(listNames.flatMap((role) => (fields[role].length > 0 ? [[role, fields[role]]] : []))),
+      ...fields.otherRoles,
+    },
     ...(fields.noise ? { noise: fields.noise } : {}),
     ...(Object.keys(settings).length > 0 ? { settings } : {}),
     ...(fields.overSetting ? { over: { [fields.overSetting]: parts(fields.overValues).map((v) => settingFrom(fields.overSetting, v)) } } : {}),
@@ -125,6 +143,8 @@ export function nextClaimId(taken: readonly string[]): string {
 export const emptyClaim = (taken: readonly string[], like?: ClaimFields): ClaimFields => ({
   ...(like ?? fieldsFromClaim({})),
   settings: { ...like?.settings },
+  signals: [...(like?.signals ?? [])],
+  templates: [...(like?.templates ?? [])],
   quantity: like?.quantity ?? 'match',
   id: nextClaimId(taken),
 });

@@ -11,7 +11,7 @@ interface SettingsProps {
 }
 
 /** The settings most claims name come first; the rest is a choice away. */
-const often = ['totalMassMsun', 'distanceMpc', 'fLowHz', 'fHighHz', 'startM', 'normaliseBy', 'includeEnergyBeforeStart', 'parameters'];
+const often = ['observable', 'method', 'fit', 'fieldGauss', 'joinHz', 'weight', 'totalMassMsun', 'distanceMpc', 'fLowHz', 'fHighHz', 'startM', 'normaliseBy', 'includeEnergyBeforeStart', 'parameters'];
 
 export function ClaimSettings({ form, index, quantity }: SettingsProps) {
   const at = `claims.${index}` as const;
@@ -41,7 +41,7 @@ function rangeOf({ shape, unit }: SettingRow): string {
   if (shape.kind === 'cosmology') return 'for example {"h0":67.4,"omegaM":0.315}';
   if (shape.kind === 'interval') return `[from, to] ${unit}`.trim();
   if (shape.kind === 'subset') return shape.options.join(', ');
-  if (shape.kind === 'place') return `${shape.options.join(', ')}, or for example {"${shape.numbers[0]?.name ?? 'timeM'}":0.3}`;
+  if (shape.kind === 'place') return `${shape.options.join(', ')}, or for example ${shape.flags?.[0] ? `{"${shape.flags[0]}":true}` : `{"${shape.numbers[0]?.name ?? 'timeM'}":0.3}`}`;
   return '';
 }
 

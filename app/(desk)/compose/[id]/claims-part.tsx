@@ -22,7 +22,7 @@ interface ClaimsPartProps {
 export function ClaimsPart({ form, catalogue, verdicts }: ClaimsPartProps) {
   const rows = useFieldArray({ control: form.control, name: 'claims', keyName: 'key' });
   const ids = () => form.getValues('claims').map((c) => c.id);
-  const names = { waveforms: form.watch('waveforms').map((w) => w.name), noise: form.watch('noise').map((n) => n.name) };
+  const names = { waveforms: form.watch('waveforms').map((w) => w.name), noise: form.watch('noise').map((n) => n.name), series: [...new Set(form.watch('waveforms').map((w) => w.series.trim()).filter((s) => s !== ''))] };
   const fresh = (): ClaimFields => ({ ...emptyClaim(ids()), a: names.waveforms[0] ?? '', b: names.waveforms[1] ?? '', noise: names.noise[0] ?? '' });
   const remove = (index: number) => {
     const gone = form.getValues(`claims.${index}`);
@@ -42,7 +42,7 @@ export function ClaimsPart({ form, catalogue, verdicts }: ClaimsPartProps) {
           <table className="tbl min-w-[860px]" onKeyDown={moveInColumn}>
             <caption className="sr-only">Claims. Enter and the arrow keys up and down move through a column; beneath each row is what is declared for it.</caption>
             <colgroup><col className="w-[9%]" /><col className="w-[20%]" /><col className="w-[10%]" /><col className="w-[10%]" /><col className="w-[10%]" /><col className="w-[14%]" /><col className="w-[10%]" /><col /><col /></colgroup>
-            <thead><tr>{['Claim', 'Quantity', 'Of a', 'and b', 'Noise', 'Claimed', 'Tolerance', 'Unit', 'Reads'].map((head) => <th key={head} scope="col">{head}</th>)}</tr></thead>
+            <thead><tr>{['Claim', 'Quantity', 'Of', 'and', 'Noise', 'Claimed', 'Tolerance', 'Unit', 'Reads'].map((head) => <th key={head} scope="col">{head}</th>)}</tr></thead>
             {rows.fields.map((row, i) => (
               <ClaimRow key={row.key} form={form} index={i} catalogue={catalogue} names={names} verdicts={verdicts} onRemove={() => remove(i)} onDuplicate={() => rows.insert(i + 1, emptyClaim(ids(), form.getValues(`claims.${i}`)))} />
             ))}

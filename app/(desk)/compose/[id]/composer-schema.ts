@@ -20,7 +20,7 @@ const once = (part: string, read: (row: Record<string, unknown>) => unknown) => 
 export const composerSchema = z.looseObject({
   title: z.string().max(300, 'At most 300 characters.'),
   statement: z.string().max(100_000, 'At most 100,000 characters.'),
-  waveforms: z.array(z.looseObject({ name, totalMassMsun: numeric, distanceMpc: numeric, junkEndM: numeric, massRatio: numeric, chi1z: numeric, chi2z: numeric })).superRefine(once('name', (row) => row['name'])),
+  waveforms: z.array(z.looseObject({ name, totalMassMsun: numeric, distanceMpc: numeric, junkEndM: numeric, massRatio: numeric, chi1z: numeric, chi2z: numeric, admEnergy: numeric, admAngularMomentum: numeric, remnantMass: numeric, remnantSpin: numeric, eccentricity: numeric, fieldGauss: numeric, resolution: numeric, extractionRadiusM: numeric })).superRefine(once('name', (row) => row['name'])),
   noise: z.array(z.looseObject({ name })).superRefine(once('name', (row) => row['name'])),
   claims: z.array(z.looseObject({ id: name, quantity: z.string().min(1, 'Choose a quantity.'), tolerance: numeric })).superRefine(once('id', (row) => row['id'])),
 }) as unknown as z.ZodType<ComposerFields, ComposerFields>;

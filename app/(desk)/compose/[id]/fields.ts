@@ -28,6 +28,18 @@ export interface WaveformFields {
   massRatio: string;
   chi1z: string;
   chi2z: string;
+  admEnergy: string;
+  admAngularMomentum: string;
+  remnantMass: string;
+  remnantSpin: string;
+  eccentricity: string;
+  fieldGauss: string;
+  series: string;
+  resolution: string;
+  extractionRadiusM: string;
+  radiusType: string;
+  timeLabel: string;
+  tetrad: string;
   rest: Json;
 }
 
@@ -50,9 +62,9 @@ export interface ComposerFields {
   claims: ClaimFields[];
 }
 
-const texts = ['file', 'domain', 'variable', 'timeUnit', 'amplitudeUnit', 'polarisation', 'negativeM'] as const;
-const numbers = ['totalMassMsun', 'distanceMpc', 'psi4Factor', 'junkEndM'] as const;
-const binaryNumbers = ['massRatio', 'chi1z', 'chi2z'] as const;
+const texts = ['file', 'domain', 'variable', 'timeUnit', 'amplitudeUnit', 'polarisation', 'negativeM', 'series', 'radiusType', 'timeLabel', 'tetrad'] as const;
+const numbers = ['totalMassMsun', 'distanceMpc', 'psi4Factor', 'junkEndM', 'resolution', 'extractionRadiusM'] as const;
+const binaryNumbers = ['massRatio', 'chi1z', 'chi2z', 'admEnergy', 'admAngularMomentum', 'remnantMass', 'remnantSpin', 'eccentricity', 'fieldGauss'] as const;
 
 const text = (value: unknown): string => (typeof value === 'string' ? value : typeof value === 'number' ? String(value) : '');
 const without = (json: Json, names: readonly string[]): Json => Object.fromEntries(Object.entries(json).filter(([name]) => !names.includes(name)));

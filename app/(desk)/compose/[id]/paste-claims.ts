@@ -7,7 +7,7 @@ export interface Pasted {
   readonly problems: readonly string[];
 }
 
-const direct = ['id', 'quantity', 'a', 'b', 'noise', 'claimed', 'tolerance'] as const;
+const direct = ['id', 'quantity', 'a', 'b', 'em', 'gw', 'series', 'noise', 'claimed', 'tolerance'] as const;
 type Direct = (typeof direct)[number];
 const isDirect = (name: string): name is Direct => (direct as readonly string[]).includes(name);
 
@@ -26,8 +26,8 @@ function columnName(head: string, settings: readonly string[]): string | null {
 }
 
 /**
- * A table copied from a spreadsheet, its first line naming the columns (`id`, `quantity`, `a`, `b`,
- * `noise`, `claimed`, `tolerance`, or any setting). What a row leaves out is taken from `like`.
+ * A table copied from a spreadsheet, its first line naming the columns (`id`, `quantity`, `a`, `b`, `em`, `gw`,
+ * `series`, `noise`, `claimed`, `tolerance`, or any setting). What a row leaves out is taken from `like`.
  */
 export function pasteClaims(text: string, taken: readonly string[], settings: readonly string[], like?: ClaimFields): Pasted {
   const lines = text.split(/\r?\n/).filter((line) => line.trim() !== '');

@@ -54,7 +54,7 @@ function PastedRow({ claim, problems }: { readonly claim: ClaimFields; readonly 
   return (
     <tr className="align-top">
       <th scope="row">{claim.id}</th>
-      {column('quantity', claim.quantity)}{column('a', claim.a)}{column('b', claim.b)}{column('noise', claim.noise)}
+      {column('quantity', claim.quantity)}{column('a', claim.a || claim.em || claim.series)}{column('b', claim.b || claim.gw)}{column('noise', claim.noise)}
       <td>{settings.map(([name, value]) => <Cell key={name} shown={`${name} ${value}`} problem={problems[name]} />)}</td>
       {column('claimed', claim.claimed)}{column('tolerance', claim.tolerance)}
     </tr>

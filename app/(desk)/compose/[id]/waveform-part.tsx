@@ -21,18 +21,37 @@ interface Choice {
 }
 const choices: readonly Choice[] = [
   { field: 'domain', label: 'Domain', assumed: 'time', options: ['time', 'frequency'] },
-  { field: 'variable', label: 'Variable', assumed: 'strain', options: ['strain', 'news', 'psi4'] },
+  { field: 'variable', label: 'Variable', assumed: 'strain', options: ['strain', 'news', 'psi4', 'phi2', 'luminosity'] },
   { field: 'timeUnit', label: 'Unit of the first column', assumed: 'M', options: ['M', 's', '1/M', 'Hz'] },
-  { field: 'amplitudeUnit', label: 'Amplitude', assumed: 'rh/M', options: ['rh/M', 'strain'] },
+  { field: 'amplitudeUnit', label: 'Amplitude', assumed: 'rh/M; geometric for φ₂', options: ['rh/M', 'strain', 'geometric', 'perField'] },
   { field: 'polarisation', label: 'Sign of cross', assumed: 'plus-minus-i-cross', options: ['plus-minus-i-cross', 'plus-plus-i-cross'] },
   { field: 'negativeM', label: 'Modes with m < 0', assumed: 'given if any is in the file, else mirror', options: ['mirror', 'given', 'none'] },
 ];
+
+const frames = [
+  { field: 'radiusType', label: 'Kind of radius', assumed: 'assumed: areal', options: ['areal', 'isotropic', 'coordinate'] },
+  { field: 'timeLabel', label: 'Time label', assumed: 'not given', options: ['retarded', 'coordinate'] },
+  { field: 'tetrad', label: 'Tetrad of φ₂', assumed: 'assumed: symmetric', options: ['symmetric', 'kinnersley'] },
+] as const;
+
+const binaryFields = [
+  ['massRatio', 'Mass ratio q ≥ 1'],
+  ['chi1z', 'Spin χ₁z'],
+  ['chi2z', 'Spin χ₂z'],
+  ['admEnergy', 'Initial energy, M'],
+  ['admAngularMomentum', 'Initial angular momentum, M²'],
+  ['remnantMass', 'Remnant mass, M'],
+  ['remnantSpin', 'Remnant spin'],
+  ['eccentricity', 'Eccentricity'],
+  ['fieldGauss', 'Magnetic field, G'],
+] as const;
 
 const layouts: readonly (readonly [string, string])[] = [
   ['t re im', 'one mode: real and imaginary part'],
   ['t amplitude phase', 'one mode: amplitude and phase'],
   ['t plus cross', 'along a line of sight: plus and cross'],
   ['t plus', 'along a line of sight: plus alone'],
+  ['t L', 'a luminosity in erg/s'],
   ['t re22 im22', 'mode set: name each pair with its mode'],
 ];
 
@@ -81,6 +100,19 @@ function WaveformRow({ form, index, files, onRemove }: { readonly form: Composer
           </SelectField>
         ))}
       </div>
+      <Disclosure summary="Which run of the simulation, and the frame it was read off in">
+        <div className="grid gap-3 sm:grid-cols-3">
+          <TextField label="Series" placeholder="not given" hint="One name for the resolutions or radii of one simulation" {...register(`${at}.series`)} />
+          <TextField label="Grid spacing, M" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.resolution`)} {...register(`${at}.resolution`)} />
+          <TextField label="Extraction radius, M" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.extractionRadiusM`)} {...register(`${at}.extractionRadiusM`)} />
+          {frames.map(({ field, label, assumed, options }) => (
+            <SelectField key={field} label={label} {...register(`${at}.${field}`)}>
+              <option value="">{assumed}</option>
+              {options.map((o) => <option key={o}>{o}</option>)}
+            </SelectField>
+          ))}
+        </div>
+      </Disclosure>
       <Disclosure summary="Mode, own mass and distance, binary">
         <div className="grid gap-3 sm:grid-cols-4">
           <TextField label="Mode ℓ,m" placeholder="assumed: 2,2" {...register(`${at}.mode`)} />
@@ -88,9 +120,7 @@ function WaveformRow({ form, index, files, onRemove }: { readonly form: Composer
           <TextField label="Own distance, Mpc" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.distanceMpc`)} {...register(`${at}.distanceMpc`)} />
           <TextField label="Factor of ψ₄" placeholder="assumed: 1" inputMode="decimal" error={errorAt(form, `${at}.psi4Factor`)} {...register(`${at}.psi4Factor`)} />
           <TextField label="End of start-up burst, M" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.junkEndM`)} {...register(`${at}.junkEndM`)} />
-          <TextField label="Mass ratio q ≥ 1" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.massRatio`)} {...register(`${at}.massRatio`)} />
-          <TextField label="Spin χ₁z" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.chi1z`)} {...register(`${at}.chi1z`)} />
-          <TextField label="Spin χ₂z" placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.chi2z`)} {...register(`${at}.chi2z`)} />
+          {binaryFields.map(([field, label]) => <TextField key={field} label={label} placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.${field}`)} {...register(`${at}.${field}`)} />)}
         </div>
       </Disclosure>
       <div><Button size="low" tone="quiet" onClick={onRemove}>Remove this waveform</Button></div>
