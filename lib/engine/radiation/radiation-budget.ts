@@ -76,8 +76,13 @@ function floorLine({ settings: { floor } }: PreparedPoint, elsewhere: Elsewhere)
  * E09: the modes above the last ℓ, as the tail of a geometric series in what each ℓ adds. Symmetry can
  * silence every other ℓ, so the ratio is taken over two steps where the file has three and ℓ does not
  * multiply its neighbours. One-sided: half of it ± half/√3; we leave the value as it is and give the whole over √3.
+ * Shape:  one line; null where the shares show no series to continue.
+ * Units:  those of the shares.
+ * Error:  an estimate.
+ * Fails:  never.
+ * Source: domain reference E09.
  */
-function modesLine(shares: readonly EllShare[], { noun, couplesEll }: RadiationRecipe): BudgetLine {
+export function modesLine(shares: readonly EllShare[], { noun, couplesEll }: Pick<RadiationRecipe, 'noun' | 'couplesEll'>): BudgetLine {
   const base = { component: 'Modes left out', id: 'E09', group: 'coverage' } as const;
   const [last, before] = [shares.at(-1), shares.at(-2)];
   const earlier = couplesEll ? undefined : shares.at(-3);
