@@ -1,10 +1,14 @@
 import type { Finding } from '@/lib/engine/contract/finding';
-import type { NoiseDeclaration } from '@/lib/engine/contract/layout';
+import type { Column, NoiseDeclaration } from '@/lib/engine/contract/layout';
 import type { Problem } from '@/lib/kernel/problem';
 import { ok, type Result } from '@/lib/kernel/result';
 import type { OpenFile } from './open-file';
+import { identityFindings } from './hidden-identity';
 import { readTable } from './read-table';
 import { notFiniteFindings } from './series-findings';
+import { whereRow } from './row-place';
+import { readArrays } from './arrays/read-arrays';
+import type { NumberTable } from './text/table';
 
 /** A noise table as its file gives it; the engine's noise room turns it into a curve. */
 export interface NoiseColumns {
@@ -15,6 +19,8 @@ export interface NoiseColumns {
   readonly sided: 'one' | 'two';
   /** File and line of a row, for messages. */
   readonly whereRow: (row: number) => string;
+  /** What is written on it: its name, its file's and the comments there. */
+  readonly writing: readonly string[];
 }
 
 export interface ReadNoise {
@@ -25,13 +31,13 @@ export interface ReadNoise {
 
 /** One uploaded noise table of a sheet. Order and sign of its rows are judged by the noise room (V19). */
 export async function readNoise(declaration: Extract<NoiseDeclaration, { kind: 'table' }>, openFile: OpenFile): Promise<Result<ReadNoise, Problem[]>> {
-  const read = await readTable(declaration.file, declaration.columns, openFile);
+  const read = await readCurveTable(declaration, openFile);
   if (!read.ok) return read;
-  const table = read.value;
-  const findings = notFiniteFindings(table, declaration.columns, 'Hz');
+  const { table, columns } = read.value;
+  const findings = notFiniteFindings(table, columns, 'Hz');
   if (findings.length > 0) return ok({ noise: null, findings });
-  const at = (kind: string) => declaration.columns.findIndex((column) => column.role.kind === kind);
-  const column = declaration.columns[at('noise')]!;
+  const at = (kind: string) => columns.findIndex((column) => column.role.kind === kind);
+  const column = columns[at('noise')]!;
   const meaning = column.role.kind === 'noise' ? column.role.meaning : 'asd';
   return ok({
     noise: {
@@ -40,8 +46,18 @@ export async function readNoise(declaration: Extract<NoiseDeclaration, { kind: '
       values: table.columns[at('noise')]!,
       meaning,
       sided: declaration.sided,
-      whereRow: (row) => `${declaration.file}:${table.lineOfRow(row)}`,
+      whereRow: (row) => whereRow(table, row),
+      writing: [declaration.name, declaration.file, ...(table.comments ?? []).map(({ text }) => text)],
     },
-    findings: [],
+    findings: identityFindings(declaration.file, table.comments ?? []),
   });
+}
+
+async function readCurveTable({ file, format, columns }: Extract<NoiseDeclaration, { kind: 'table' }>, openFile: OpenFile): Promise<Result<{ readonly table: NumberTable; readonly columns: readonly Column[] }, Problem[]>> {
+  if (format === 'npy') {
+    const arrays = await readArrays(file, { layout: { format, parts: [], time: null }, declared: columns, leastL: 0 }, openFile, null);
+    return arrays.ok ? ok({ table: arrays.value.tables[0]!.table, columns: arrays.value.columns }) : arrays;
+  }
+  const read = await readTable(file, columns, openFile);
+  return read.ok ? ok({ table: read.value, columns }) : read;
 }

@@ -6,6 +6,7 @@ import { collect, err, ok, type Result } from '@/lib/kernel/result';
 import { uniformStepOf } from './axis';
 import { contentOf, type ModeTable } from './content';
 import { gapFindings, type WaveTrace } from './gaps';
+import { headerFindings } from './header-findings';
 import type { OpenFile } from './open-file';
 import { printedDigits } from './printed-digits';
 import { readTable } from './read-table';
@@ -50,8 +51,8 @@ export function assembleWaveform(declaration: WaveformDeclaration, tables: reado
   if (declaration.domain === 'frequency' && !(axis[0]! > 0))
     return err([{ code: 'formats/frequency-not-positive', where: `${first.file}:${first.lineOfRow(0)}`, saw: `f = ${axis[0]} ${unit}`, expected: 'frequencies above zero', hint: 'Leave out zero and negative frequencies.' }]);
   const waveform = waveformOf(declaration, tables, axis);
-  const findings = declaration.domain === 'time' && waveform.uniformStep === null ? gapFindings(first.file, first.lineOfRow, axis, unit, traceOf(waveform.content)) : [];
-  return ok({ waveform, findings });
+  const gaps = declaration.domain === 'time' && waveform.uniformStep === null ? gapFindings(first.file, first.lineOfRow, axis, unit, traceOf(waveform.content)) : [];
+  return ok({ waveform, findings: [...gaps, ...headerFindings(declaration, tables)] });
 }
 
 function waveformOf(declaration: WaveformDeclaration, tables: readonly ModeTable[], axis: Float64Array): Waveform {

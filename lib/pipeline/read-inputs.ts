@@ -64,7 +64,7 @@ async function readCurve(declaration: NoiseDeclaration, files: HashedFiles): Pro
   if (!read.ok) return read;
   if (read.value.noise === null) return ok({ input: null, findings: read.value.findings });
   const curve = tabulatedCurve(read.value.noise);
-  return ok(curve.ok ? { input: curve.value.curve, findings: curve.value.findings } : { input: null, findings: curve.error });
+  return ok(curve.ok ? { input: curve.value.curve, findings: [...curve.value.findings, ...read.value.findings] } : { input: null, findings: curve.error });
 }
 
 /** Two names may share one file; its faults are told once. */

@@ -15,7 +15,9 @@ export interface UploadedCurve {
 const SAME = 0.005;
 /** Differences that are spoken of. */
 const APART = 0.03;
-/** So many octaves of the same numbers in one piece are no accident. */
+/** Fits of a published curve stay further away; printed copies of one, nearer. */
+const COPIED = 3e-4;
+/** So many octaves copied in one piece are no accident. */
 const LEAST_SAME = 2;
 /** And so many octaves must be apart before anything is asked. */
 const LEAST_APART = 0.25;
@@ -48,11 +50,11 @@ function pointsAgainst({ f, psd }: UploadedCurve, curve: BuiltInCurve, read: (fH
 
 const octaves = (points: readonly Point[]): number => points.reduce((sum, { width }) => sum + width, 0);
 
-/** Octaves of the longest piece in which every point is the same. */
+/** Octaves of the longest piece in which every point is copied. */
 function longestSame(points: readonly Point[]): number {
   let [best, here] = [0, 0];
   for (const { width, apart } of points) {
-    here = Math.abs(apart) < SAME ? here + width : 0;
+    here = Math.abs(apart) < COPIED ? here + width : 0;
     if (here > best) best = here;
   }
   return best;
@@ -119,8 +121,8 @@ function shapeOf(points: readonly Point[]): string {
   const ratio = Math.exp(Math.abs(far.apart));
   const list = byOctave(points)
     .slice(0, MOST_OCTAVES)
-    .map((o) => `${short(o.fromHz)}–${short(o.toHz)} Hz ${Math.abs(Math.log(o.ratio)) < SAME ? 'equal' : `×${short(o.ratio)}`}`);
-  return `lies up to ×${short(ratio)} ${above ? 'above' : 'below'} it, at ${short(far.fHz)} Hz. Ratio of amplitude densities by octaves: ${list.join(', ')}`;
+    .map((o) => `${short(o.fromHz, 4)}–${short(o.toHz, 4)} Hz ${Math.abs(Math.log(o.ratio)) < SAME ? 'equal' : `×${short(o.ratio)}`}`);
+  return `lies up to ×${short(ratio)} ${above ? 'above' : 'below'} it, at ${short(far.fHz, 4)} Hz. Ratio of amplitude densities by octaves: ${list.join(', ')}`;
 }
 
 /** Does the writing on it name this curve: by its title, or by its id? Ids such as A1 stand for much else and count in brackets or after "curve" only. */

@@ -1,5 +1,6 @@
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
+import { curveIdentity } from '@/lib/engine/findings/curve-identity';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import { isInside } from './built-in-curves';
 
@@ -13,6 +14,8 @@ export interface NoiseTable {
   readonly sided: 'one' | 'two';
   /** Where a row stands, e.g. its file and line; by default the row's number counted from 1. */
   readonly whereRow?: (index: number) => string;
+  /** What is written on it; where it is given, the curve is compared with the published ones. */
+  readonly writing?: readonly string[];
 }
 
 export interface TabulatedCurve {
@@ -39,7 +42,7 @@ export function tabulatedCurve(table: NoiseTable): Result<TabulatedCurve, Findin
   const f = Float64Array.from(table.f);
   const s = Float64Array.from(table.values, (value, i) => oneSidedPower(value, f[i]!, table));
   const psd = logLogInterpolation(f, s);
-  const coarse = coarseFinding(table, f, s);
+  const found = [coarseFinding(table, f, s), table.writing === undefined ? null : curveIdentity({ name: table.name, f, psd: s, writing: table.writing })];
   return ok({
     curve: {
       name: table.name,
@@ -51,7 +54,7 @@ export function tabulatedCurve(table: NoiseTable): Result<TabulatedCurve, Findin
       alreadyAveraged: false,
       source: `table of ${f.length} points, ${table.meaning}, ${table.sided}-sided, as attached`,
     },
-    findings: coarse ? [coarse] : [],
+    findings: found.filter((finding) => finding !== null),
   });
 }
 

@@ -1,0 +1,38 @@
+import type { Finding } from '@/lib/engine/contract/finding';
+import type { CommentLine } from './text/table';
+
+/** What a line of a file's header gives away, and the word for it. The finding never repeats it. */
+const signs: readonly { readonly pattern: RegExp; readonly what: string }[] = [
+  { pattern: /(^|[^\w.])(\/home|\/Users|\/u|\/scratch|\/gpfs\/home|\/lustre\/home|\/data\/users)\/[A-Za-z0-9._-]+/, what: 'a path that begins with somebody’s directory' },
+  { pattern: /(^|\s)~[a-z][a-z0-9_-]*\//, what: 'a path that begins with somebody’s directory' },
+  { pattern: /[A-Za-z]:\\Users\\[^\\\s]+/, what: 'a path that begins with somebody’s directory' },
+  { pattern: /[A-Za-z0-9._%+-]+@[A-Za-z0-9-]+(\.[A-Za-z0-9-]+)*\.[A-Za-z]{2,}\b/, what: 'an address of e-mail' },
+  { pattern: /\b(user|username|userid|login|uid|logname)\s*[:=]\s*\S+/i, what: 'the name of a user' },
+  { pattern: /\b[a-z][a-z0-9_-]*@[a-z][a-z0-9.-]*:/, what: 'a user and a machine' },
+];
+
+const identityIn = (text: string): string | null => signs.find(({ pattern }) => pattern.test(text))?.what ?? null;
+
+const mostNamed = 5;
+
+/** V29: header lines by which a reader could tell whose file it is, one finding a file. */
+export function identityFindings(file: string, comments: readonly CommentLine[]): Finding[] {
+  const seen = comments.flatMap(({ line, text }) => {
+    const what = identityIn(text);
+    return what === null ? [] : [{ line, what }];
+  });
+  const [first] = seen;
+  if (first === undefined) return [];
+  const others = seen.slice(1, mostNamed).map(({ line }) => line);
+  const more = seen.length > mostNamed ? ' and others' : '';
+  const also = others.length === 0 ? '' : ` So ${others.length === 1 ? 'does line' : 'do lines'} ${others.join(', ')}${more}.`;
+  return [
+    {
+      code: 'formats/hidden-identity',
+      level: 'needs-answer',
+      where: `${file}:${first.line}`,
+      text: `Header line ${first.line} of ${file} contains ${first.what}.${also} The file is given to referees, and with a record to everybody, as it was attached.`,
+      fix: 'Attach the file without it, or answer that it may stay.',
+    },
+  ];
+}
