@@ -42,10 +42,17 @@ export interface PairRoutes {
 }
 
 /** The mode that stands for strain along a line of sight, so that it is scaled and integrated like one. */
-const ALONG: ModeIndex = [2, 2];
+export const ALONG: ModeIndex = [2, 2];
 
-/** Plus and cross as one complex series h₊ − ih×. */
-function asModes(waveform: Waveform): Waveform | Finding {
+/**
+ * Plus and cross as one complex series h₊ − ih×; modes completed by the mirror rule.
+ * Shape:  a waveform that holds modes.
+ * Units:  those of the file.
+ * Error:  none.
+ * Fails:  with the finding that stops the claim where there is one polarisation only.
+ * Source: settings.md rules 2.2 and 2.3.
+ */
+export function asModes(waveform: Waveform): Waveform | Finding {
   const { content, name } = waveform;
   if (content.kind === 'modes') return completeModes(waveform).waveform;
   if (content.cross === null) return stop('engine/no-signal', name, `${name} holds one polarisation only, from which no phase can be read.`, 'Supply plus and cross, or modes.');
