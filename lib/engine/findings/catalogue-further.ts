@@ -1,0 +1,76 @@
+import type { CatalogueRow } from './catalogue';
+
+const stops = [{ level: 'stops-lodging' }] as const;
+const look = [{ level: 'worth-a-look' }] as const;
+
+const stop = (code: string, concerns: string, rule: string, advice: string): CatalogueRow => ({ code, numbers: [], part: 'stops', levels: stops, concerns, rule, advice });
+
+/** What single quantities add to the list of validations. */
+export const furtherRows: readonly CatalogueRow[] = [
+  {
+    code: 'engine/peak-at-edge', numbers: [], part: 'sampling', levels: look, concerns: 'peak luminosity',
+    rule: 'The flux is largest at an end of the interval; the number is a lower bound.',
+    advice: 'Supply the record through the merger, or declare an earlier startM.',
+  },
+  {
+    code: 'engine/join-in-taper', numbers: [], part: 'sampling', levels: look, concerns: 'hybrid loudness',
+    rule: 'The join lies below the frequency at which the numerical signal has come in fully.',
+    advice: 'Join at a higher frequency, or attach a waveform that starts earlier.',
+  },
+  {
+    code: 'engine/several-roots', numbers: [], part: 'sampling', levels: look, concerns: 'horizons',
+    rule: 'The loudness crosses the threshold at several redshifts; the largest is given.',
+    advice: 'Say in the statement which one is meant.',
+  },
+  {
+    code: 'engine/alignment-degenerate', numbers: [], part: 'runs', levels: look, concerns: 'phase and amplitude differences',
+    rule: 'In the window of the alignment the frequency hardly changes, so that a shift of time cannot be told from a phase; the smallest shift is used.',
+    advice: 'Declare a window in which the frequency changes, or alignment: peak.',
+  },
+  {
+    code: 'engine/no-single-order', numbers: [], part: 'runs', levels: look, concerns: 'order of convergence',
+    rule: 'The quartiles of the orders measured point by point lie more than 1 apart.',
+    advice: 'Supply another resolution, or claim the difference of the two best runs.',
+  },
+  {
+    code: 'engine/fit-beyond-range', numbers: [], part: 'facts', levels: look, concerns: 'published fits',
+    rule: 'The mass ratio or a spin lies beyond the simulations from which a fit was made.',
+    advice: 'Say in the statement that the fit is extrapolated.',
+  },
+  {
+    code: 'engine/ringdown-against-balance', numbers: [], part: 'facts', levels: look, concerns: 'remnant mass and spin',
+    rule: 'The remnant by balance and the one by its ringing are further apart than both allow.',
+    advice: 'Check the start values, the modes and the window of the ringdown.',
+  },
+  {
+    code: 'engine/early-plateau', numbers: [], part: 'fields', levels: look, concerns: 'electromagnetic energies',
+    rule: 'Before the signal |φ₂|² exceeds 10⁻⁴ of its peak: a background that is not subtracted.',
+    advice: 'Subtract the background, or say that it is meant to be in the number.',
+  },
+  {
+    code: 'engine/per-field', numbers: [], part: 'fields', levels: [{ level: 'note' }], concerns: 'electromagnetic energies',
+    rule: 'The file is per unit of field and the claim names no field: the number is an energy over the square of the field.',
+    advice: 'Declare fieldGauss and totalMassMsun for an energy.',
+  },
+  stop('engine/no-signal', 'all', 'There is nothing to compute from: no signal in the modes, along the line of sight, in the band or in the window of the claim.', 'Check modes, response, line of sight, band and window.'),
+  stop('engine/too-few-points', 'detectors; detectable fraction', 'A record has fewer than 16 samples, or fewer than 5 signals stand for a family.', 'Attach more.'),
+  stop('engine/curve-already-averaged', 'loudness', 'An average over the sky is asked for on a curve that contains it.', 'Leave out "average", or name a curve of the instrument alone.'),
+  stop('engine/average-needs-modes', 'loudness', 'An average over orientations is asked for of a strain along one line of sight.', 'Attach the modes, or claim the average "sky".'),
+  stop('engine/no-horizon', 'horizons', 'Between z = 0.001 and 50 the loudness does not cross the threshold.', 'Check mass, threshold and band.'),
+  stop('engine/not-a-strain', 'detectors', 'The file holds a variable from which no strain follows.', 'Attach strain, news or ψ₄.'),
+  stop('engine/mass-not-rescalable', 'detectors', 'A source-frame mass is asked of a physical strain without a mass and distance of its own.', 'Give totalMassMsun and distanceMpc beside the file, or declare massFrame: detector.'),
+  stop('engine/setting-missing', 'all', 'A mass or redshift that scales the number is not known.', 'Declare it.'),
+  stop('engine/records-far-apart', 'overlaps', 'Two records share no time, and nothing may be shifted.', 'Shift one of the files, or claim a match.'),
+  stop('engine/too-many-lines', 'detectors', 'The product of two spectra would need more frequencies than are held.', 'Narrow the band, or attach a series in time.'),
+  stop('engine/polarisation-needs-complex', 'matches', 'The polarisation is maximised over while only one is used.', 'Declare response: complex, or leave out "polarisation".'),
+  stop('engine/inclination-needs-modes', 'matches', 'The inclination is maximised over for a strain along one line of sight.', 'Attach the modes, or leave out "inclination".'),
+  stop('engine/search-too-wide', 'degeneracy', 'A search over mass, shift and azimuth is asked for at every line of sight.', 'Leave out "templateMass", or claim one line of sight.'),
+  stop('engine/no-modes', 'mode content', 'The quantity compares modes, and the file holds a strain along one line of sight.', 'Attach the modes.'),
+  stop('engine/hybrid-face-on', 'hybrid loudness', 'The post-Newtonian part is known face-on in the plus polarisation alone.', 'Leave the setting out.'),
+  stop('engine/normaliser-missing', 'sums over modes; ringdown', 'The number is referred to a mass that the sheet does not state.', 'State it under "binary", or refer the number to M.'),
+  stop('engine/start-missing', 'remnant mass and spin', 'The balance begins with values that the sheet does not state.', 'State admEnergy and admAngularMomentum, or declare method: balance-pn.'),
+  stop('engine/fit-not-applicable', 'published fits', 'The fit does not give this number, or was made for bodies without spin.', 'Declare fit: mean, or another fit.'),
+  stop('engine/no-order', 'order of convergence', 'There are fewer than three resolutions, equal spacings, or no positive order up to 20.', 'Supply three different resolutions.'),
+  stop('engine/no-field', 'electromagnetic energies', 'Rescaling is asked for and the field or mass of the computation is not stated.', 'State fieldGauss and totalMassMsun beside the file.'),
+  stop('engine/defect', 'all', 'The computation met a condition that it does not foresee. It fails closed; other claims of the sheet go on.', 'It is a fault of the program: report it with the sheet.'),
+];
