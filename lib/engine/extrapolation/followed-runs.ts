@@ -86,5 +86,5 @@ export function followRuns(waveforms: readonly Waveform[], leader: Waveform, dec
     runs.push(run);
   }
   const endM = Math.min(...[...records.values()].map(({ axis }) => axis[axis.length - 1]!));
-  return { runs, mode: sighted ? null : mode, severalModes: leading.modes.length > 1, floor, endM };
+  return { runs, mode: sighted ? null : mode, severalModes: leader.content.kind === 'modes' && leader.content.modes.length > 1, floor, endM };
 }

@@ -6,7 +6,8 @@ const CLOSE = 1e-15;
 /** ln[(h₁^p − h₂^p)/(h₂^p − h₃^p)] with a = ln h₁/h₂ and b = ln h₂/h₃. */
 const logRatio = (p: number, a: number, b: number): number => p * a + Math.log(-Math.expm1(-p * a)) - Math.log(-Math.expm1(-p * b));
 
-const slopeOf = (p: number, a: number, b: number): number => a + a / Math.expm1(p * a) - b / Math.expm1(p * b);
+/** How fast that logarithm grows with p. */
+export const logRatioSlope = (p: number, a: number, b: number): number => a + a / Math.expm1(p * a) - b / Math.expm1(p * b);
 
 /**
  * Route B: the same order by Newton's method on the logarithm of the ratio, which is nearly straight in p.
@@ -23,7 +24,7 @@ export function orderByNewton(ratio: number, [h1, h2, h3]: Spacings): number {
   if (!(a > 0 && b > 0 && target > atZero)) return Number.NaN;
   let p = (2 * (target - atZero)) / (a + b);
   for (let i = 0; i < STEPS; i++) {
-    const next = p - (logRatio(p, a, b) - target) / slopeOf(p, a, b);
+    const next = p - (logRatio(p, a, b) - target) / logRatioSlope(p, a, b);
     const kept = next > 0 ? next : p / 2;
     if (Math.abs(kept - p) <= CLOSE * p) break;
     p = kept;
