@@ -83,7 +83,7 @@ export const isPrinted = (request: PointRequest): boolean =>
  */
 export function computationError(recipe: Recipe, request: PointRequest, found: Evaluated, store: SpectrumStore): ComputationError {
   const base = recipe.again(kitOf(houseNumerics, store), request, found);
-  let quadrature = Math.abs(base - found.value);
+  let quadrature = Math.abs(base - found.value) + (found.doubt ?? 0);
   let largest = { name: 'none', by: 0 };
   for (const { name, numerics } of knobs) {
     const moved = Math.abs(recipe.again(kitOf(numerics, store), request, found) - base);

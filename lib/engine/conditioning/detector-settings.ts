@@ -19,6 +19,12 @@ export interface DetectorTraits {
   readonly needsDistance: boolean;
   /** Solves for a distance at a threshold (horizons, comoving volumes). */
   readonly horizon: boolean;
+  /** Polarisations that are looked at unless the claim names others. */
+  readonly response?: Response;
+  /** Angles of the line of sight that the quantity goes over by itself where the claim does not fix them. */
+  readonly goesOver?: { readonly inclination: boolean; readonly azimuth: boolean };
+  /** Takes one waveform up to a frequency, and a closed form below. */
+  readonly joined?: true;
 }
 
 export type Average = 'optimal' | 'sky' | 'sky-orientation' | 'volume';
@@ -143,7 +149,7 @@ function assemble(request: PointRequest, scale: Scale): DetectorPoint {
     ...scale,
     band: { noise, fLowHz: declared.fLowHz ?? noise.fLowHz, fHighHz: declared.fHighHz ?? defaultTopHz(noise, sides) },
     maximise: traits.maximise === null ? [] : (declared.maximise ?? traits.maximise),
-    response: declared.response ?? houseValues.response,
+    response: declared.response ?? traits.response ?? houseValues.response,
     average: declared.average ?? houseValues.average,
     detectors: declared.detectors ?? houseValues.detectors,
     armAngleDeg: declared.armAngleDeg ?? houseValues.armAngleDeg,

@@ -1,6 +1,7 @@
 import { requiredSettings } from '@/lib/engine/conditioning/detector-settings';
 import type { Quantity } from '@/lib/engine/contract/quantity';
 import { measureDetector } from './measure-detector';
+import type { SettingName } from '@/lib/engine/contract/settings';
 import type { Recipe } from './recipe';
 
 type Described = Pick<Quantity, 'id' | 'title' | 'symbol' | 'unit' | 'roles' | 'settings' | 'sweepable' | 'naturalTolerance' | 'formula'>;
@@ -12,7 +13,9 @@ export const detectorQuantity = (described: Described, recipe: Recipe): Quantity
   scale: 'absolute',
   required: (inputs, declared, over) => {
     const waveforms = [inputs.of.a, inputs.of.b].filter((w) => w !== undefined);
-    return requiredSettings(waveforms, declared, over, recipe.traits(declared));
+    const has = (name: SettingName): boolean => declared[name] !== undefined || over === name;
+    const own = recipe.requires?.(waveforms, has) ?? [];
+    return [...new Set([...requiredSettings(waveforms, declared, over, recipe.traits(declared)), ...own])];
   },
   measure: (request, watch) => measureDetector({ ...described, recipe }, request, watch),
 });

@@ -202,7 +202,9 @@ function sweepFigure({ walk, points }: FigureContext): Figure[] {
  * Source: product.md, the record's linked plots.
  */
 export function detectorFigures(context: FigureContext): Figure[] {
-  const figures = [...waveformsFigure(context), integrandFigure(context), ...sweepFigure(context)];
+  const { walk, found, worst } = context;
+  const own = walk.quantity.recipe.ownFigures?.({ kit: walk.kitA, request: walk.requests[worst]!, found: found[worst]!, store: walk.store }) ?? [];
+  const figures = [...waveformsFigure(context), integrandFigure(context), ...own, ...sweepFigure(context)];
   const clean = (values: readonly (number | null)[]) => values.map((v) => (v !== null && Number.isFinite(v) ? v : null));
   return figures.map((figure) => ({ ...figure, series: figure.series.map((s) => ({ ...s, values: clean(s.values) })) }));
 }

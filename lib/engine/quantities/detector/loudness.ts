@@ -47,7 +47,7 @@ interface Sight {
 }
 
 /** Gauss–Legendre nodes and weights on [−1, 1] by Newton on the Legendre polynomial. */
-function legendreRule(n: number): { x: number; w: number }[] {
+export function legendreRule(n: number): { x: number; w: number }[] {
   return Array.from({ length: n }, (_, i) => {
     let x = Math.cos((Math.PI * (i + 0.75)) / (n + 0.5));
     let slope = 1;

@@ -3,8 +3,11 @@
  * findings and figures. What makes each one itself is a recipe: a value at a point by a route.
  */
 import type { DetectorPoint, DetectorTraits, PointRequest } from '@/lib/engine/conditioning/detector-settings';
-import type { DetectorRoute, MatchOutcome } from '@/lib/engine/contract/route';
-import type { DeclaredSettings } from '@/lib/engine/contract/settings';
+import type { BudgetLine, Figure } from '@/lib/engine/contract/measurement';
+import type { Finding } from '@/lib/engine/contract/finding';
+import type { DetectorRoute, MatchOutcome, Sight, SightMatch } from '@/lib/engine/contract/route';
+import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settings';
+import type { Waveform } from '@/lib/engine/contract/waveform';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 
 /** A route, and the same route allowed to be cruder while it only looks for a bracket. */
@@ -24,6 +27,25 @@ export interface Evaluated {
   readonly redshift?: number;
   readonly distanceMpc?: number;
   readonly roots?: readonly number[];
+  /** Lines of sight that make the value, with their shares, and where b was left for each. */
+  readonly sights?: readonly { readonly sight: Sight; readonly share: number; readonly match: SightMatch }[];
+  /** Half-width of what a search or a mean leaves open, beside the route's own error. */
+  readonly doubt?: number;
+}
+
+/** What the recipe adds to the budget: how the value moves under other settings. */
+export interface OwnBudget {
+  readonly request: PointRequest;
+  readonly found: Evaluated;
+  readonly movedBy: (settings: DeclaredSettings) => number;
+}
+
+/** What the recipe's own figures are drawn from. */
+export interface OwnFigures {
+  readonly kit: RouteKit;
+  readonly request: PointRequest;
+  readonly found: Evaluated;
+  readonly store: SpectrumStore;
 }
 
 export interface Recipe {
@@ -37,6 +59,15 @@ export interface Recipe {
   readonly floor: (value: number) => number;
   /** A signal cut by the band's edge makes this value a lower bound. */
   readonly snrLike: boolean;
+  /** Settings without a default, beyond those of every quantity of one detector; `has` tells what is declared or swept. */
+  readonly requires?: (waveforms: readonly Waveform[], has: (name: SettingName) => boolean) => readonly SettingName[];
+  /** What makes this quantity alone impossible to compute. */
+  readonly stops?: (request: PointRequest) => readonly (Finding | null)[];
+  /** Findings of this quantity alone, at one point. */
+  readonly looks?: (request: PointRequest) => readonly (Finding | null)[];
+  readonly ownBudget?: (context: OwnBudget) => readonly BudgetLine[];
+  /** Drawn at the point furthest from its claim. */
+  readonly ownFigures?: (context: OwnFigures) => readonly Figure[];
   /** The point whose band and mass the findings and figures look at. */
   readonly shownPoint: (request: PointRequest, found: Evaluated) => DetectorPoint;
 }

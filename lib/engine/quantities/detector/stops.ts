@@ -125,12 +125,13 @@ function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | 
   ];
 }
 
-function pointStops(request: PointRequest, store: SpectrumStore): Finding[] {
+function pointStops(quantity: DetectorQuantity, request: PointRequest, store: SpectrumStore): Finding[] {
   const point = detectorPoint(request);
   const { band } = point;
   const c = roleWaveforms(request);
   const sides = [point.a, ...(point.b === null ? [] : [point.b])];
-  const allSky = point.average === 'sky-orientation' || point.average === 'volume';
+  const anywhere = request.traits.goesOver?.inclination === true && request.declared.inclinationRad === undefined;
+  const allSky = point.average === 'sky-orientation' || point.average === 'volume' || anywhere;
   const empty =
     band.fHighHz > band.fLowHz
       ? null
@@ -148,6 +149,7 @@ function pointStops(request: PointRequest, store: SpectrumStore): Finding[] {
     apartStop(point),
     tooManyLines(point, !request.traits.loudness, store),
     request.traits.horizon ? null : empty,
+    ...(quantity.recipe.stops?.(request) ?? []),
     ...c.map((waveform, i) => look.nothingSeen(waveform, sides[i] ?? sides[0]!, harmonicSize(sides[i] ?? sides[0]!), allSky)),
   ];
   return found.filter((finding) => finding !== null);
@@ -159,10 +161,10 @@ const distinct = (findings: readonly Finding[]): Finding[] => [
 ];
 
 /** What makes a claim impossible to compute, read off before any transform; one message for each cause. */
-export function stopsOf(_quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[], store: SpectrumStore): Finding[] {
+export function stopsOf(quantity: DetectorQuantity, _request: MeasureRequest, requests: readonly PointRequest[], store: SpectrumStore): Finding[] {
   // The curve is one for all points, and reading it takes as long as a spectrum.
   const invalid = look.curveInvalid(requests[0]!.noise);
-  const all = invalid === null ? distinct(requests.flatMap((request) => pointStops(request, store))) : [invalid];
+  const all = invalid === null ? distinct(requests.flatMap((request) => pointStops(quantity, request, store))) : [invalid];
   const seen = new Set<string>();
   return all.filter(({ code, where }) => !seen.has(`${code}|${where}`) && seen.add(`${code}|${where}`));
 }
@@ -217,8 +219,7 @@ export function findingsOf(quantity: DetectorQuantity, requests: readonly PointR
     return [
       look.negativeMAssumed(c),
       look.modesMissing(c),
-      look.signalStartsInBand(c, affected, level),
-      look.taperRoom(c, affected),
+      ...(first.traits.joined ? [] : [look.signalStartsInBand(c, affected, level), look.taperRoom(c, affected)]),
       look.bandBeyondSampling(c, affected),
       look.ringBeyondSampling(c, affected),
       ...recordsOf(c, points[0]!.declared.lMax ?? null),
@@ -227,5 +228,6 @@ export function findingsOf(quantity: DetectorQuantity, requests: readonly PointR
   const roots = (found ?? []).map((here, i) =>
     look.severalRoots(requests[i]!.a.given.name, first.traits.horizon && requests[i]!.b === null ? (here.roots ?? []) : []),
   );
-  return distinct([...perWaveform, ...roots].filter((finding) => finding !== null));
+  const own = requests.flatMap((request) => quantity.recipe.looks?.(request) ?? []);
+  return distinct([...perWaveform, ...roots, ...own].filter((finding) => finding !== null));
 }

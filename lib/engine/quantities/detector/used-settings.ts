@@ -34,7 +34,8 @@ function facts({ points, waveforms, traits }: SettingsContext) {
     const taper = c.taper('auto', point.declared.lMax ?? null);
     return taper.startIsOpen || taper.endIsOpen;
   });
-  const bySight = modes && (optimal || point.average === 'sky');
+  const seen = modes && (optimal || point.average === 'sky');
+  const bySight = (angle: 'inclination' | 'azimuth'): boolean => seen && !(traits.goesOver?.[angle] && point.declared[`${angle}Rad`] === undefined);
   return { point, given, modes, several, optimal, source, open, bySight };
 }
 
@@ -62,15 +63,15 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'fHighHz', value: (p) => p.band.fHighHz, unit: 'Hz', used: true, matters: true },
     { name: 'maximise', value: (p) => p.maximise, used: traits.maximise !== null, matters: true },
     { name: 'templateMassRange', value: (p) => p.templateMassRange, unit: '× M', used: searchesMass, matters: true },
-    { name: 'inclinationRad', value: (p) => p.a.inclinationRad, unit: 'rad', used: bySight, matters: true },
-    { name: 'azimuthRad', value: (p) => p.a.azimuthRad, unit: 'rad', used: bySight, matters: true },
+    { name: 'inclinationRad', value: (p) => p.a.inclinationRad, unit: 'rad', used: bySight('inclination'), matters: true },
+    { name: 'azimuthRad', value: (p) => p.a.azimuthRad, unit: 'rad', used: bySight('azimuth'), matters: true },
     { name: 'response', value: (p) => p.response, used: optimal, matters: true },
     { name: 'modes', value: (p) => p.declared.modes ?? houseValues.modes, used: modes, matters: several },
     { name: 'lMax', value: (p) => p.declared.lMax, used: declared.lMax !== undefined, matters: false },
     {
       name: 'average',
       value: (p) => p.average,
-      used: traits.loudness && !(declared.rateLaw === 'comoving'),
+      used: traits.loudness && !(declared.rateLaw === 'comoving') && traits.goesOver === undefined && traits.joined === undefined,
       matters: !point.band.noise.alreadyAveraged,
     },
     { name: 'detectors', value: (p) => p.detectors, used: traits.absolute, matters: true },
@@ -80,6 +81,10 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'cosmology', value: (p) => p.cosmology, unit: 'h0 in km/s/Mpc', used: expands, matters: true },
     { name: 'parameters', value: (p) => p.declared.parameters ?? houseValues.parameters, used: context.allowed.includes('parameters'), matters: true },
     { name: 'rateLaw', value: (p) => p.declared.rateLaw ?? houseValues.rateLaw, used: context.allowed.includes('rateLaw'), matters: true },
+    { name: 'statistic', value: (p) => p.declared.statistic ?? houseValues.statistic, used: context.allowed.includes('statistic'), matters: true },
+    { name: 'joinHz', value: (p) => p.declared.joinHz, unit: 'Hz', used: traits.joined === true, matters: false },
+    { name: 'amplitudeOrder', value: (p) => p.declared.amplitudeOrder ?? houseValues.amplitudeOrder, used: traits.joined === true, matters: true },
+    ...(['massRatio', 'chi1z', 'chi2z'] as const).map((name): Row => ({ name, value: (p) => p.declared[name], used: declared[name] !== undefined, matters: false })),
     { name: 'negativeM', value: () => 'mirror', used: waveforms.some((c) => c.mirrorAssumed), matters: true },
   ];
 }
