@@ -1,0 +1,106 @@
+import type { Finding } from '../contract/finding';
+import type { DeclaredSettings } from '../contract/settings';
+import type { Waveform } from '../contract/waveform';
+import { energyOnPanels } from '../radiation/energy-on-panels';
+import { energyOnSamples, totalEnergy, type ModeEnergy } from '../radiation/energy-on-samples';
+import { relativeSlip } from '../radiation/input-rounding';
+import { houseSamples, radiationOnSamples, type SampledRadiation } from '../radiation/news-on-samples';
+import { NO_FLOOR } from '../radiation/radiation-recipe';
+import { isFinding, stop, type At } from '../tones/measure-tones';
+import { fieldScale, type FieldScale } from './field-scale';
+import { phi2Record, type Phi2Record } from './phi2-record';
+
+/** φ₂ of one file from a start on: everything but the field to which it is rescaled. */
+export interface EmSource extends Phi2Record {
+  readonly waveform: Waveform;
+  readonly startM: number;
+  readonly radiation: SampledRadiation;
+  /** E/M of each mode as the file has it, by route A. */
+  readonly modes: readonly ModeEnergy[];
+  /** E/M as the file has it, by route B; computed when first asked for. */
+  readonly byRouteB: () => number;
+}
+
+/** One point of a claim: a source at a field. */
+export interface EmPoint {
+  readonly at: At;
+  readonly source: EmSource;
+  readonly scale: FieldScale;
+}
+
+function once<T>(make: () => T): () => T {
+  let made: { readonly value: T } | null = null;
+  return () => (made ??= { value: make() }).value;
+}
+
+/**
+ * Reads φ₂ of a file and takes its energy by route A on the samples, and by route B on splines and Gauss
+ * panels when that is asked for.
+ * Shape:  one source.
+ * Units:  startM in M; energies as fractions of M.
+ * Error:  that of energyOnSamples and energyOnPanels.
+ * Fails:  with the finding that stops: no modes, no signal, a start outside the record.
+ * Source: Q23; settings.md section 7.
+ */
+export function emSource(waveform: Waveform, declared: DeclaredSettings): EmSource | Finding {
+  const found = phi2Record(waveform);
+  if (isFinding(found)) return found;
+  const { record, overFlux } = found;
+  const [first, last] = [record.axis[0]!, record.axis[record.axis.length - 1]!];
+  const startM = declared.startM ?? waveform.junkEndM ?? first;
+  // A printed start may be a rounding below the first sample.
+  if (!(startM >= first - 1e-9 * (last - first) && startM < last)) return stop('engine/no-signal', waveform.name, `The integral starts at t = ${startM} M, but ${waveform.name} runs from ${first} to ${last} M.`, 'Give a startM inside the record, on its own time axis.');
+  const radiation = radiationOnSamples(record, NO_FLOOR, houseSamples, false);
+  const scaled = (modes: readonly ModeEnergy[]): ModeEnergy[] => modes.map((mode) => ({ ...mode, energy: overFlux * mode.energy }));
+  const byRouteB = once(() => totalEnergy(scaled(energyOnPanels(record, startM, NO_FLOOR))));
+  return { ...found, waveform, startM, radiation, modes: scaled(energyOnSamples(radiation, startM)), byRouteB };
+}
+
+/**
+ * A source at the field of each point of a sweep; the source is read once.
+ * Shape:  gives a function of the swept setting's value.
+ * Units:  as EmPoint.
+ * Error:  none of its own.
+ * Fails:  with the finding that stops the claim.
+ * Source: settings.md section 7.
+ */
+export function emPreparer(waveform: Waveform, declared: DeclaredSettings): (at: At) => EmPoint | Finding {
+  const source = emSource(waveform, declared);
+  return (at) => {
+    if (isFinding(source)) return source;
+    const scale = fieldScale(waveform, { ...declared, ...at }, Object.keys(at).length > 0);
+    return isFinding(scale) ? scale : { at, source, scale };
+  };
+}
+
+/** E/M by route A. */
+export const emEnergyA = ({ source, scale }: EmPoint): number => scale.factor * totalEnergy(source.modes);
+
+/** E/M by route B. */
+export const emEnergyB = ({ source, scale }: EmPoint): number => scale.factor * source.byRouteB();
+
+export interface EmUncertainty {
+  readonly quadrature: number;
+  readonly rounding: number;
+}
+
+const ROOT3 = Math.sqrt(3);
+/** Relative size below which no computation in double precision is trusted (engine design). */
+const LEAST = 1e-13;
+
+/**
+ * How far route A moves with local polynomials of order 6 instead of 8, and with the last printed digit
+ * of every sample: nothing is differentiated, so that a slip in common bounds the whole.
+ * Shape:  two standard uncertainties.
+ * Units:  those of E/M.
+ * Error:  half-width over √3.
+ * Fails:  never; zero rounding where nothing was printed.
+ * Source: settings.md rule 12; domain reference section 5.
+ */
+export function emUncertainty(point: EmPoint): EmUncertainty {
+  const { source, scale } = point;
+  const here = emEnergyA(point);
+  const other = scale.factor * source.overFlux * totalEnergy(energyOnSamples(source.radiation, source.startM, 6));
+  const digits = source.waveform.significantDigits;
+  return { quadrature: Math.max(Math.abs(other - here) / ROOT3, LEAST * here), rounding: digits === null ? 0 : 2 * relativeSlip(digits) * here };
+}
