@@ -27,6 +27,7 @@ export function navFor(actor: Actor): readonly NavEntry[] {
 const footLinks = [
   { href: '/methods', label: 'How a verdict is made' },
   { href: '/methods/conventions', label: 'Conventions' },
+  { href: '/methods/noise', label: 'Noise curves' },
   { href: '/methods/glossary', label: 'Glossary' },
   { href: '/interface', label: 'Interface' },
 ] as const;

@@ -12,6 +12,7 @@ export const PAGE_DOORS = {
   'page /methods/{quantity}': ['anyone'],
   'page /methods/glossary': ['anyone'],
   'page /methods/conventions': ['anyone'],
+  'page /methods/noise': ['anyone'],
   'page /methods/findings': ['anyone'],
   'page /interface': ['anyone'],
   'page /problems/{code}': ['anyone'],
