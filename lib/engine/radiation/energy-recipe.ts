@@ -1,4 +1,5 @@
 import { houseValues } from '../contract/house-values';
+import { energyFindings } from '../remnant/energy-findings';
 import { energyBefore } from './energy-before';
 import { energyOnPanels } from './energy-on-panels';
 import { ENERGY_FACTOR, energyOnSamples, totalEnergy, type ModeEnergy } from './energy-on-samples';
@@ -40,9 +41,10 @@ export const energyRecipe: RadiationRecipe = {
     return roundingOfIntegral(products, point.record, sampledAs(store, point, house), point.settings.startM, digits) / point.norm;
   },
   shares: (point, store) => sharesByEll(energyOnSamples(sampledAs(store, point, house), point.settings.startM), point.norm),
-  findings: ({ completed, point }) => [
-    ...negativeModesFinding(completed, completed.waveform.name, '; without them the energy would be half'),
-    ...missingModesFindings(completed, listedButMissing(completed, point), restrictsModes(point), 'energy', 'Higher modes add about 1.6 % at equal mass and 7 % at 2:1.'),
+  findings: (context) => [
+    ...negativeModesFinding(context.completed, context.completed.waveform.name, '; without them the energy would be half'),
+    ...missingModesFindings(context.completed, listedButMissing(context.completed, context.point), restrictsModes(context.point), 'energy', 'Higher modes add about 1.6 % at equal mass and 7 % at 2:1.'),
+    ...energyFindings(energyRecipe, context),
   ],
   figures: (point, store, name) => [energyFigure(sampledAs(store, point, house), point.settings.startM, name)],
 };

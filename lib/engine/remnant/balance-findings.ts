@@ -1,9 +1,10 @@
 import type { Finding } from '../contract/finding';
-import type { FindingContext } from '../radiation/radiation-recipe';
+import type { FindingContext, RadiationRecipe } from '../radiation/radiation-recipe';
 import { restrictsModes } from '../radiation/used-modes';
 import type { Balance } from './balance-recipe';
 import { energyAgainstFits } from './energy-against-fits';
 import { energyBalance, lateRecord } from './energy-balance';
+import { standardU, statedBinary } from './energy-findings';
 import { postNewtonianStart, startX } from './start-values';
 
 /** Further apart than this, balance and ringing do not speak of the same hole. */
@@ -37,18 +38,13 @@ function late({ method, whole }: Balance, { point: { settings }, completed }: Fi
  * Fails:  never.
  * Source: domain reference 4.3; settings.md rule 11 and section 8.
  */
-export function balanceFindings(balance: Balance, context: FindingContext): Finding[] {
+export function balanceFindings(balance: Balance, recipe: RadiationRecipe, context: FindingContext): Finding[] {
   const { which, method } = balance;
   const { completed, point, outcome } = context;
   const { binary, name } = completed.waveform;
   const ringing = againstRinging(balance, context);
   if (which === 'spin' || restrictsModes(point)) return [...late(balance, context), ...ringing];
   const radiated = outcome.components.radiated ?? Number.NaN;
-  const known = settingsKnown(point.settings.binary, binary) ? point.settings.binary : null;
-  const since = method === 'balance-pn' ? energyAgainstFits(known, 1 - outcome.value, true, name) : [];
-  return [...late(balance, context), ...energyBalance(binary, radiated, 0, name), ...since, ...ringing];
+  const since = method === 'balance-pn' ? energyAgainstFits(statedBinary(point, binary), 1 - outcome.value, true, name) : [];
+  return [...late(balance, context), ...energyBalance(binary, radiated, standardU(recipe, context), name), ...since, ...ringing];
 }
-
-/** Fits need the spins, and none is not the same as not stated. */
-export const settingsKnown = (claimed: { readonly chi1z: number; readonly chi2z: number } | null, stated: { readonly chi1z?: number; readonly chi2z?: number }): boolean =>
-  claimed !== null && (stated.chi1z !== undefined || claimed.chi1z !== 0) && (stated.chi2z !== undefined || claimed.chi2z !== 0);

@@ -129,7 +129,7 @@ const noNumber = ({ method }: Balance) => (name: string): Finding =>
 export function balanceRecipe(balance: Balance): RadiationRecipe {
   const { which, method, request } = balance;
   const check = ringdownCheck(balance);
-  return {
+  const recipe: RadiationRecipe = {
     noun: which,
     article: 'A',
     settings: ['modes', 'lMax', 'startM', 'integrationFloor'],
@@ -156,8 +156,9 @@ export function balanceRecipe(balance: Balance): RadiationRecipe {
     findings: (context) => [
       ...negativeModesFinding(context.completed, context.completed.waveform.name, '; without them what is radiated would be half'),
       ...missingModesFindings(context.completed, listedButMissing(context.completed, context.point), restrictsModes(context.point), which === 'mass' ? 'energy' : 'angular momentum', 'Higher modes carry some of it too.'),
-      ...balanceFindings(balance, context),
+      ...balanceFindings(balance, recipe, context),
     ],
     figures: (point, store, name) => figureOf(balance, point, store, name),
   };
+  return recipe;
 }
