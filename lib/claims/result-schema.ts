@@ -26,6 +26,45 @@ const finding = z.looseObject({
   fix: z.string().optional(),
 });
 
+const budgetLine = z.looseObject({
+  component: z.string(),
+  id: z.string(),
+  group: z.enum(['computation', 'coverage']),
+  u: nullable,
+  note: z.string(),
+  degreesOfFreedom: z.number().optional(),
+  share: nullable.optional(),
+});
+
+/** A whole budget, or one group of it, as one uncertainty; what is missing is not in it. */
+const total = z.looseObject({
+  u: nullable,
+  degreesOfFreedom: nullable,
+  coverageFactor: z.number(),
+  expanded: nullable,
+  interval: z.object({ low: z.number(), high: z.number() }).optional(),
+  missing: z.array(z.string()),
+});
+
+const metricBound = z.looseObject({
+  low: nullable,
+  high: nullable,
+  knownTo: z.array(z.looseObject({ waveform: z.string(), relative: z.string(), by: z.enum(['resolution', 'radius']), mismatch: z.number() })),
+  missing: z.array(z.string()),
+});
+
+const sensitivity = z.looseObject({
+  setting: z.string(),
+  standing: z.enum(['declared', 'assumed', 'swept']),
+  unit: z.string().optional(),
+  used: z.unknown(),
+  tried: z.unknown(),
+  value: nullable,
+  change: nullable,
+  inTolerances: nullable,
+  because: z.string().optional(),
+});
+
 const claim = z.looseObject({
   id: z.string(),
   quantity: z.string(),
@@ -34,7 +73,10 @@ const claim = z.looseObject({
   remarks: z.array(z.string()),
   coverage: z.object({ state: z.enum(['covered', 'understated', 'unknown']), missing: z.array(z.string()).optional(), factor: z.number().optional() }),
   points: z.array(point).min(1),
-  budget: z.array(z.looseObject({ component: z.string(), id: z.string(), group: z.enum(['computation', 'coverage']), u: nullable, note: z.string() })),
+  budget: z.array(budgetLine),
+  uncertainty: z.looseObject({ computation: total, data: total }).optional(),
+  metricBound: metricBound.optional(),
+  sensitivities: z.array(sensitivity).optional(),
   assumed: z.array(z.string()),
   settings: z.array(z.looseObject({ name: z.string(), value: z.unknown(), standing: z.enum(['declared', 'assumed', 'swept']), unit: z.string().optional() })),
   routeB: z.array(z.int()),

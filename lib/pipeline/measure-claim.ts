@@ -1,5 +1,6 @@
 import { waveformNames, type Claim, type ClaimSheet } from '@/lib/claims/claim';
 import { inputRoles } from '@/lib/claims/claim-inputs';
+import { completeMeasurement } from '@/lib/engine/budget/complete-measurement';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { Measurement } from '@/lib/engine/contract/measurement';
 import type { Waveform } from '@/lib/engine/contract/waveform';
@@ -51,8 +52,9 @@ function relativesOf(name: string, sheet: ClaimSheet): string[] {
 function measureOrStop(claim: Claim, inputs: QuantityInputs, extent: Extent, watch: Watch, points: readonly Readonly<Record<string, number>>[]): Measurement {
   const claimed = claim.claimed.map((entry) => (entry.kind === 'value' ? entry.value : null));
   try {
-    const measurement = claim.quantity.measure({ claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent }, watch);
-    if (measurement.points.length === points.length) return measurement;
+    const request = { claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent };
+    const measurement = claim.quantity.measure(request, watch);
+    if (measurement.points.length === points.length) return completeMeasurement(claim.quantity, request, measurement, watch);
     return notComputable([defect(claim, `it gave ${measurement.points.length} values for ${points.length} points`)], points);
   } catch (thrown) {
     if (thrown instanceof Cancelled) throw thrown;

@@ -1,6 +1,9 @@
 import type { BudgetLine, Figure, MeasuredPoint, UsedSetting } from '@/lib/engine/contract/measurement';
 import type { Claimed } from '@/lib/claims/claimed';
 import type { Finding } from '@/lib/engine/contract/finding';
+import type { MetricBound } from '@/lib/engine/contract/metric-bound';
+import type { Sensitivity } from '@/lib/engine/contract/sensitivity';
+import type { Total } from '@/lib/engine/budget/total';
 import type { Coverage } from '@/lib/verdicts/coverage';
 import type { VerdictWord } from '@/lib/verdicts/verdict';
 
@@ -18,6 +21,19 @@ export interface ResultPoint extends Omit<MeasuredPoint, 'remarks'> {
   readonly verdict: VerdictWord;
 }
 
+/** Both totals of a budget, at the worst point; where components are missing, what is told bounds the whole from below. */
+export interface ResultUncertainty {
+  /** Makes U and the verdict. */
+  readonly computation: Total;
+  /** All lines together: decides coverage. */
+  readonly data: Total;
+}
+
+export interface ResultSensitivity extends Sensitivity {
+  /** The change in units of T, on the scale of the verdict. */
+  readonly inTolerances: number | null;
+}
+
 export interface ResultClaim {
   readonly id: string;
   readonly quantity: string;
@@ -27,6 +43,12 @@ export interface ResultClaim {
   readonly coverage: Coverage;
   readonly points: readonly ResultPoint[];
   readonly budget: readonly BudgetLine[];
+  /** Absent where there is no budget, and in results of earlier versions. */
+  readonly uncertainty?: ResultUncertainty;
+  /** Of match-like claims: how well two imperfectly known waveforms can be compared. */
+  readonly metricBound?: MetricBound;
+  /** How far each setting moves the number; only of runs that also drew figures. */
+  readonly sensitivities?: readonly ResultSensitivity[];
   readonly assumed: readonly string[];
   readonly settings: readonly UsedSetting[];
   readonly routeB: readonly number[];

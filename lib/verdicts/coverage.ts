@@ -13,30 +13,34 @@ export interface Coverage {
 /** A stated uncertainty a fifth below what the data allow still covers it (domain reference 5.4). */
 const coversFrom = 0.8;
 
+/** What the data allow, as the workshop combined it: all lines of the budget together. */
+export interface Allowed {
+  /** k·u; null where nothing is known. */
+  readonly expanded: number | null;
+  /** 95 %, where the spread is not symmetric. */
+  readonly interval?: { readonly low: number; readonly high: number };
+}
+
 /**
- * Does the stated uncertainty cover what the data allow? Standard uncertainties of all lines, in
- * quadrature and doubled, against twice the stated one (or the digits', when none is stated).
+ * Does the stated uncertainty cover what the data allow? All lines together, expanded, against twice the
+ * stated standard uncertainty (or the digits', when none is stated).
  * One line that cannot be estimated makes the whole unknown: unknown is never zero.
  */
-export function coverageOf(claimed: Claimed, value: number | null, budget: readonly BudgetLine[]): Coverage {
+export function coverageOf(claimed: Claimed, value: number | null, budget: readonly BudgetLine[], allowed: Allowed): Coverage {
   const missing = budget.filter((line) => !isFiniteNumber(line.u)).map((line) => line.component);
-  if (value === null) missing.push('the recomputed value');
-  else if (budget.length === 0) missing.push('the error budget');
-  if (missing.length > 0) return { state: 'unknown', missing: [...new Set(missing)] };
-  const allowed = expandedOf(budget);
-  if (claimed.kind !== 'value') return boundCoverage(claimed, value ?? Number.NaN, allowed);
+  if (!isFiniteNumber(value)) missing.push('the recomputed value');
+  if (missing.length === 0 && !isFiniteNumber(allowed.expanded)) missing.push('the error budget');
+  if (missing.length > 0 || !isFiniteNumber(value) || !isFiniteNumber(allowed.expanded)) return { state: 'unknown', missing: [...new Set(missing)] };
+  const interval = allowed.interval ?? { low: value - allowed.expanded, high: value + allowed.expanded };
+  if (claimed.kind !== 'value') return boundCoverage(claimed, interval);
   const stated = 2 * (claimed.uncertainty ?? halfLastDigit(claimed) / Math.sqrt(3));
   if (stated === 0) return { state: 'unknown', missing: ['stated uncertainty'] };
-  if (stated >= coversFrom * allowed) return { state: 'covered' };
-  return { state: 'understated', factor: Number((allowed / stated).toPrecision(3)) };
+  const wider = Math.max(value - interval.low, interval.high - value);
+  if (stated >= coversFrom * wider) return { state: 'covered' };
+  return { state: 'understated', factor: Number((wider / stated).toPrecision(3)) };
 }
 
-/** 2u of all lines together, or NaN when one is not known. */
-export function expandedOf(budget: readonly BudgetLine[]): number {
-  return 2 * Math.sqrt(budget.reduce((sum, { u }) => sum + (u === null ? Number.NaN : u * u), 0));
-}
-
-function boundCoverage(claimed: Extract<Claimed, { bound: number }>, value: number, allowed: number): Coverage {
-  const holds = claimed.kind === 'above' ? value - allowed >= claimed.bound : value + allowed <= claimed.bound;
+function boundCoverage(claimed: Extract<Claimed, { bound: number }>, { low, high }: { readonly low: number; readonly high: number }): Coverage {
+  const holds = claimed.kind === 'above' ? low >= claimed.bound : high <= claimed.bound;
   return { state: holds ? 'covered' : 'understated' };
 }

@@ -1,7 +1,7 @@
 import type { Claimed } from '@/lib/claims/claimed';
 import type { BudgetLine, MeasuredPoint } from '@/lib/engine/contract/measurement';
 import { isFiniteNumber } from '@/lib/kernel/finite';
-import { expandedOf } from './coverage';
+import type { Allowed } from './coverage';
 import type { VerdictWord } from './verdict';
 
 /** A point with what was claimed of it and what the weighing said. */
@@ -12,9 +12,9 @@ export interface WeighedPoint {
 }
 
 /** Qualifiers beside the verdict: digits overstated, narrower scope, and those the measurement brings (lower bound only). */
-export function remarksOf(points: readonly WeighedPoint[], budget: readonly BudgetLine[]): string[] {
+export function remarksOf(points: readonly WeighedPoint[], budget: readonly BudgetLine[], allowed: Allowed): string[] {
   const measured = points.flatMap((point) => point.measured.remarks ?? []);
-  const remarks = [digitsOverstated(points, budget), narrowerScope(points), ...new Set(measured)];
+  const remarks = [digitsOverstated(points, budget, allowed), narrowerScope(points), ...new Set(measured)];
   return remarks.filter((remark) => remark !== null);
 }
 
@@ -23,12 +23,11 @@ export function remarksOf(points: readonly WeighedPoint[], budget: readonly Budg
  * d = ⌈−log₁₀ U⌉. U is the whole budget's when all of it is known; otherwise what is known of it
  * bounds U from below, since a component that is not available can only add.
  */
-function digitsOverstated(points: readonly WeighedPoint[], budget: readonly BudgetLine[]): string | null {
+function digitsOverstated(points: readonly WeighedPoint[], budget: readonly BudgetLine[], { expanded }: Allowed): string | null {
   const unknown = budget.length === 0 || budget.some((line) => !isFiniteNumber(line.u));
-  const known = expandedOf(budget.filter((line) => isFiniteNumber(line.u)));
   for (const { claimed, measured, word } of points) {
     if (word !== 'agrees' || claimed.kind !== 'value' || claimed.digits === null) continue;
-    const uncertainty = Math.max(known, measured.expandedUncertainty ?? 0);
+    const uncertainty = Math.max(expanded ?? 0, measured.expandedUncertainty ?? 0);
     if (!(uncertainty > 0)) continue;
     const supported = Math.ceil(-Math.log10(uncertainty)) + 1;
     if (claimed.digits <= supported) continue;

@@ -78,7 +78,7 @@ function windowLine(point: PairPoint, { aligned }: PairResult, which: Which): Bu
   if (values.length < 2) return [{ ...base, u: null, note: 'The records are too short to move the edges of the window.' }];
   const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
   const u = Math.sqrt(values.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (values.length - 1));
-  return [{ ...base, u, note: `Each edge moved by a fifth of the window's length: standard deviation of the ${values.length} windows inside the records.` }];
+  return [{ ...base, u, degreesOfFreedom: values.length - 1, note: `Each edge moved by a fifth of the window's length: standard deviation of the ${values.length} windows inside the records.` }];
 }
 
 /** Lines that are listed and decide coverage, never U. */

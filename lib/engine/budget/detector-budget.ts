@@ -10,6 +10,7 @@ import type { Evaluated, Recipe, RouteKit } from '@/lib/engine/quantities/detect
 import { houseCosmology } from '@/lib/engine/units/cosmology';
 import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+import { halfUnit } from './half-unit';
 import { isPrinted, kitOf, standardOf, type ComputationError } from './error-bar';
 
 export interface BudgetContext {
@@ -202,12 +203,6 @@ function cosmologyLine(context: BudgetContext): BudgetLine[] {
   ];
 }
 
-/** Half a unit of the last digit of a number as it is usually printed; the zeros that end a whole number are taken as digits. */
-function halfUnit(x: number): number {
-  const [mantissa = '', exponent = '0'] = x.toString().split('e');
-  return 0.5 * 10 ** (Number(exponent) - (mantissa.split('.')[1]?.length ?? 0));
-}
-
 /** E13: distance and redshift are measured, so their last digit counts; band edges and masses on an axis are exact. */
 function parameterLine(context: BudgetContext): BudgetLine[] {
   const { declared } = context.request;
@@ -245,4 +240,5 @@ export const detectorBudget = (context: BudgetContext): BudgetLine[] => [
   ...modesLine(context),
   ...cosmologyLine(context),
   ...parameterLine(context),
+  ...(context.recipe.ownBudget?.({ request: context.request, found: context.found, movedBy: (settings) => movedBy(context, withSettings(context, settings)) }) ?? []),
 ];

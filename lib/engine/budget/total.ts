@@ -1,12 +1,5 @@
 import type { BudgetLine } from '../contract/measurement';
 import { combine } from './combine';
-
-declare module '../contract/measurement' {
-  interface BudgetLine {
-    readonly degreesOfFreedom?: number;
-    readonly share?: number | null;
-  }
-}
 import { monteCarloInterval, type Interval, type PhysicalRange } from './monte-carlo';
 
 /** U of the computation: k = 2, since none of its sizes is itself estimated from a few numbers. */

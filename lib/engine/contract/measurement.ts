@@ -1,4 +1,6 @@
 import type { Finding } from './finding';
+import type { MetricBound } from './metric-bound';
+import type { Sensitivity } from './sensitivity';
 
 /** One line of the error budget. `u` is null when the component cannot be estimated: unknown is never zero. */
 export interface BudgetLine {
@@ -10,6 +12,10 @@ export interface BudgetLine {
   /** Standard uncertainty in the quantity's unit, at the worst claimed point. */
   readonly u: number | null;
   readonly note: string;
+  /** How well u is known; absent where it is taken as exact. */
+  readonly degreesOfFreedom?: number;
+  /** Part of the variance of all that is known; null where u is. */
+  readonly share?: number | null;
 }
 
 export interface MeasuredPoint {
@@ -64,4 +70,8 @@ export interface Measurement {
   /** Indices of the points at which route B ran (all up to ten; else ends, worst and eight spread). */
   readonly routeBPoints: readonly number[];
   readonly figures: readonly Figure[];
+  /** Of match-like claims. */
+  readonly metricBound?: MetricBound;
+  /** Only where they were asked for, with the figures. */
+  readonly sensitivities?: readonly Sensitivity[];
 }

@@ -64,7 +64,7 @@ function windowLine(point: RingdownPoint, peakM: number, read: Read): BudgetLine
   if (values.length < 2) return { ...base, u: null, note: 'The record is too short to move the edges of the window.' };
   const mean = values.reduce((sum, value) => sum + value, 0) / values.length;
   const spread = Math.sqrt(values.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (values.length - 1));
-  return { ...base, u: spread, note: `Edges ${t1} and ${t2} M times 0.8, 1 and 1.2: standard deviation of the ${values.length} windows inside the record. Early windows give low values.` };
+  return { ...base, u: spread, degreesOfFreedom: values.length - 1, note: `Edges ${t1} and ${t2} M times 0.8, 1 and 1.2: standard deviation of the ${values.length} windows inside the record. Early windows give low values.` };
 }
 
 /** Lines that are listed and decide coverage, never U. */

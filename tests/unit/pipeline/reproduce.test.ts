@@ -68,14 +68,14 @@ describe('a sheet walks from the hall to the weighing room', () => {
   it('and comes out as a result whose fields stand in their order', async () => {
     const { result } = await reproduced(sheet());
     expect(Object.keys(result)).toEqual(['format', 'engine', 'title', 'files', 'claims']);
-    expect(Object.keys(result.claims[0] ?? {})).toEqual(['id', 'quantity', 'unit', 'verdict', 'remarks', 'coverage', 'points', 'budget', 'assumed', 'settings', 'routeB', 'findings', 'candidates']);
+    expect(Object.keys(result.claims[0] ?? {})).toEqual(['id', 'quantity', 'unit', 'verdict', 'remarks', 'coverage', 'points', 'budget', 'uncertainty', 'metricBound', 'assumed', 'settings', 'routeB', 'findings', 'candidates']);
     expect(Object.keys(result.claims[0]?.points[0] ?? {})).toEqual(['at', 'claimed', 'printed', 'tolerance', 'value', 'expandedUncertainty', 'routes', 'apart', 'verdict']);
     expect(resultSchema.safeParse(result).error).toBeUndefined();
   });
 
   it('with verdict, tolerance, coverage and what was assumed', async () => {
     const only = await onlyClaim(sheet());
-    expect(only).toMatchObject({ id: 'C1', verdict: 'agrees', coverage: { state: 'unknown', missing: ['resolution'] }, assumed: ['massFrame'], routeB: [0] });
+    expect(only).toMatchObject({ id: 'C1', verdict: 'agrees', coverage: { state: 'unknown', missing: ['Simulation truncation error', 'Extraction radius'] }, assumed: ['massFrame'], routeB: [0] });
     expect(only.points[0]).toMatchObject({ claimed: 0.9, printed: '0.90', tolerance: 0.1 + 0.005, value: 0.95 });
   });
 

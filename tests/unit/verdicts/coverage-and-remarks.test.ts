@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest';
 import { parseClaimed, type Claimed } from '@/lib/claims/claimed';
 import type { BudgetLine } from '@/lib/engine/contract/measurement';
-import { coverageOf } from '@/lib/verdicts/coverage';
-import { remarksOf } from '@/lib/verdicts/remarks';
+import { totalOf } from '@/lib/engine/budget/total';
+import { coverageOf as coverageBy } from '@/lib/verdicts/coverage';
+import { remarksOf as remarksBy, type WeighedPoint } from '@/lib/verdicts/remarks';
 import type { VerdictWord } from '@/lib/verdicts/verdict';
 
 function claimed(raw: unknown): Claimed {
@@ -10,6 +11,9 @@ function claimed(raw: unknown): Claimed {
   if (!parsed.ok) throw new Error(parsed.error.saw);
   return parsed.value;
 }
+const open = { low: null, high: null };
+const coverageOf = (of: Claimed, value: number | null, budget: readonly BudgetLine[], range = open) => coverageBy(of, value, budget, totalOf(value, budget, range));
+const remarksOf = (points: readonly WeighedPoint[], budget: readonly BudgetLine[]) => remarksBy(points, budget, totalOf(1, budget, open));
 const line = (component: string, u: number | null): BudgetLine => ({ component, id: 'E00', group: 'coverage', u, note: '' });
 
 describe('coverage', () => {
