@@ -1,41 +1,20 @@
-import type { Mode } from '@/lib/engine/contract/waveform';
 import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
 import { peakTime, withResolutionError } from '@/lib/engine/synthesis/effects';
-import { formatModesText, modeColumns } from '@/lib/engine/synthesis/modes-text';
-import { synthesise, type SynthesisRequest, type SyntheticWaveform } from '@/lib/engine/synthesis/synthesise';
+import { fieldHatOf } from '@/lib/engine/electromagnetic/em-units';
+import { curvatureOf, mirroredField } from '@/lib/engine/synthesis/electromagnetic-twin';
+import { formatModesText, modeColumns, watermark } from '@/lib/engine/synthesis/modes-text';
+import { synthesise, type SynthesisRequest } from '@/lib/engine/synthesis/synthesise';
+import { binaryFacts, digits, modesFile, positive, sheet, waveform, withoutStart, type SpecimenFile } from './specimen-parts';
+import { remnantByBalance, unconvergedPhase } from './specimens-of-runs';
 
 /**
  * The specimens: small claim sheets with synthesised data that are example, seed and test at once.
  * Each is a function of nothing, so that the files in content/specimens can be made again byte for byte.
  * Claimed numbers are what the invented authors print, not what the engine finds.
  */
-export interface SpecimenFile {
-  readonly path: string;
-  readonly text: string;
-}
 export interface Specimen {
   readonly folder: string;
   readonly files: () => readonly SpecimenFile[];
-}
-
-const digits = 8;
-const sheet = (content: object): SpecimenFile => ({
-  path: 'claim.json',
-  text: `${JSON.stringify({ format: 'counterfoil-claim/1', ...content }, null, 2)}\n`,
-});
-
-/** Only m > 0: the sheet says `negativeM: "mirror"`, and half the bytes carry the same information. */
-const positive = (modes: readonly Mode[]): Mode[] => modes.filter(({ m }) => m > 0);
-
-function modesFile(
-  path: string,
-  title: string,
-  request: SynthesisRequest,
-  wave: { readonly t: Float64Array; readonly modes: readonly Mode[] },
-): SpecimenFile {
-  const { massRatio, chi1z, chi2z, mOmega0, stepM } = request;
-  const notes = [`mass ratio ${massRatio}, spins ${chi1z} and ${chi2z}; M Omega = ${mOmega0} at t = 0; step ${stepM} M`];
-  return { path, text: formatModesText({ title, notes, t: wave.t, modes: positive(wave.modes), significantDigits: digits }) };
 }
 
 function designCurveFile(path: string, points: number): SpecimenFile {
@@ -51,18 +30,6 @@ function designCurveFile(path: string, points: number): SpecimenFile {
     text: [`# second-generation design (G2), ${points} points`, '# f (Hz)  ASD (Hz^-1/2), one-sided', ...rows, ''].join('\n'),
   };
 }
-
-const waveform = (file: string, modes: readonly Mode[], extra: object) => ({
-  file,
-  domain: 'time',
-  variable: 'strain',
-  columns: modeColumns(positive(modes)),
-  timeUnit: 'M',
-  amplitudeUnit: 'rh/M',
-  negativeM: 'mirror',
-  ...extra,
-});
-const binaryFacts = ({ massRatio, chi1z, chi2z }: SynthesisRequest) => ({ massRatio, chi1z, chi2z });
 
 const nonSpinning: SynthesisRequest = { massRatio: 1, chi1z: 0, chi2z: 0, mOmega0: 0.012, stepM: 0.5, modes: ['22'] };
 const spinning: SynthesisRequest = { ...nonSpinning, chi1z: 0.2, chi2z: 0.2 };
@@ -141,13 +108,6 @@ function loudness(): SpecimenFile[] {
 
 /** Phase that the coarser run has lost at the peak: a mismatch of 1e-6 at 100 solar masses on curve G2. */
 const coarsePhaseRad = 0.23;
-
-/** The same record without its first `n` samples: 10 Hz at 100 solar masses is early enough, and half the bytes. */
-const withoutStart = <T extends Pick<SyntheticWaveform, 't' | 'modes'>>(wave: T, n: number): T => ({
-  ...wave,
-  t: wave.t.subarray(n),
-  modes: wave.modes.map((mode) => ({ ...mode, re: mode.re.subarray(n), im: mode.im.subarray(n) })),
-});
 
 const preciseModels = () =>
   [
@@ -288,6 +248,75 @@ function ringdownAndResolution(): SpecimenFile[] {
   ];
 }
 
+/** Late enough to be small: three files of the last 700 M or so. */
+const twinRequest: SynthesisRequest = { massRatio: 1, chi1z: 0, chi2z: 0, mOmega0: 0.03, stepM: 0.5, modes: ['22'] };
+const twinMassMsun = 1e8;
+const twinRuns = [
+  { name: 'P4', file: 'phi2-weak.txt', fieldGauss: 1e4 },
+  { name: 'P6', file: 'phi2-strong.txt', fieldGauss: 1e6 },
+] as const;
+const statedRemnant = { remnantMass: 0.95161, remnantSpin: 0.68642 };
+
+function electromagneticTwin(): SpecimenFile[] {
+  const curvature = curvatureOf(synthesise(twinRequest));
+  const note = `mass ratio 1, no spin; M Omega = ${twinRequest.mOmega0} at t = 0; step ${twinRequest.stepM} M`;
+  const fields = twinRuns.map((run) => ({ ...run, wave: mirroredField(curvature, fieldHatOf(run.fieldGauss, twinMassMsun)) }));
+  const statement = [
+    'North Quay Astrophysics, code *Ferrywright*.',
+    '',
+    'An equal-mass merger of $10^8$ solar masses in a uniform magnetic field emits an electromagnetic twin of its gravitational wave. In a field of $10^4$ G the energy is $E_{EM}/M=10^{-15}$, or $2.8\\times10^{-14}$ of what goes into gravitational waves from $t=100\\,M$ on; in $10^6$ G it is $10^{-13}$. The two signals mirror each other, and the twin is observable in low-frequency radio above 1.56 kHz.',
+  ].join('\n');
+  const at = (fieldGauss: number) => ({ fieldGauss, totalMassMsun: twinMassMsun });
+  const waves = { ...waveform('psi4.txt', curvature.modes, { binary: { ...binaryFacts(twinRequest), ...statedRemnant } }), variable: 'psi4' };
+  const light = fields.map(({ name, file, fieldGauss, wave }) => [name, { file, variable: 'phi2', columns: modeColumns(wave.modes), amplitudeUnit: 'geometric', tetrad: 'symmetric', totalMassMsun: twinMassMsun, series: 'fields', binary: { ...binaryFacts(twinRequest), fieldGauss } }] as const);
+  return [
+    sheet({
+      title: 'Electromagnetic twin of a supermassive merger',
+      statement,
+      waveforms: { G: waves, ...Object.fromEntries(light) },
+      claims: [
+        { id: 'C1', quantity: 'em-energy', of: { a: 'P4' }, settings: at(1e4), claimed: '1.0e-15' },
+        { id: 'C2', quantity: 'em-energy', of: { a: 'P6' }, settings: at(1e6), claimed: '1.0e-13' },
+        { id: 'C3', quantity: 'em-ratio', of: { em: 'P4', gw: 'G' }, settings: { ...at(1e4), startM: 100 }, claimed: '2.8e-14' },
+        { id: 'C4', quantity: 'field-exponent', of: { series: 'fields' }, claimed: '2.00' },
+        { id: 'C5', quantity: 'em-frequency', of: { a: 'G' }, settings: { totalMassMsun: twinMassMsun, plasmaDensityCm3: 0.03 }, claimed: { above: 1560 } },
+        { id: 'C6', quantity: 'em-mirroring', of: { em: 'P4', gw: 'G' }, claimed: '0.00' },
+      ],
+    }),
+    { path: 'psi4.txt', text: formatModesText({ title: 'North Quay Astrophysics, Ferrywright run 9', notes: [note], t: curvature.t, modes: positive(curvature.modes), significantDigits: digits, of: 'r M psi4' }) },
+    ...fields.map(({ file, fieldGauss, wave }) => ({ path: file, text: formatModesText({ title: `North Quay Astrophysics, Ferrywright run 9, field ${fieldGauss} G at ${twinMassMsun} solar masses`, notes: [note], t: wave.t, modes: wave.modes, significantDigits: digits, of: 'r phi2 (B M in it, symmetric tetrad)' }) })),
+  ];
+}
+
+/** A flare of the disc that the recoil shakes: peak 1.26e45 erg/s after 3e5 s. */
+const flare = { peakErgPerS: 1.26e45, afterS: 3e5, restErgPerS: 1e42, stepS: 4000, rows: 400 } as const;
+
+function shakenDisc(): SpecimenFile[] {
+  const { peakErgPerS, afterS, restErgPerS, stepS, rows } = flare;
+  const lines = Array.from({ length: rows }, (_, i) => {
+    const x = (i * stepS) / afterS;
+    return `${i * stepS} ${(restErgPerS + (peakErgPerS - restErgPerS) * (x * Math.exp(1 - x)) ** 2).toExponential(digits - 1)}`;
+  });
+  const statement = [
+    'North Quay Astrophysics, code *Ferrywright*.',
+    '',
+    'The disc around the remnant of $10^8$ solar masses is shaken by the recoil and flares to a tenth of the Eddington luminosity. That is what an accretion of 0.22 solar masses a year gives at an efficiency of 0.1; the gas holds $10^{52}$ erg. With $10^{49}$ erg, as in our thin model, the luminosity is the same.',
+  ].join('\n');
+  const common = { totalMassMsun: twinMassMsun, radiusM: 20 };
+  return [
+    sheet({
+      title: 'A disc shaken by the recoil',
+      statement,
+      waveforms: { D: { file: 'luminosity.txt', variable: 'luminosity', columns: ['t', 'L'], timeUnit: 's' } },
+      claims: [
+        { id: 'C1', quantity: 'disc-luminosity', of: { a: 'D' }, settings: { ...common, internalEnergyErg: 1e52, radiativeEfficiency: 0.1, accretionRateMsunPerYear: 0.22 }, claimed: '0.10' },
+        { id: 'C2', quantity: 'disc-luminosity', of: { a: 'D' }, settings: { ...common, internalEnergyErg: 1e49 }, claimed: '0.10' },
+      ],
+    }),
+    { path: 'luminosity.txt', text: ['# North Quay Astrophysics, Ferrywright disc 4', `# ${watermark}`, '# t (s)  L (erg/s)', ...lines, ''].join('\n') },
+  ];
+}
+
 export const specimens: readonly Specimen[] = [
   { folder: 'spin-visible', files: spinVisible },
   { folder: 'loudness', files: loudness },
@@ -295,4 +324,8 @@ export const specimens: readonly Specimen[] = [
   { folder: 'radiated-energy', files: radiatedEnergy },
   { folder: 'ringdown-and-resolution', files: ringdownAndResolution },
   { folder: 'two-to-one', files: twoToOne },
+  { folder: 'remnant-by-balance', files: remnantByBalance },
+  { folder: 'unconverged-phase', files: unconvergedPhase },
+  { folder: 'electromagnetic-twin', files: electromagneticTwin },
+  { folder: 'shaken-disc', files: shakenDisc },
 ];

@@ -21,7 +21,7 @@ const roundingNote = (digits: number | null): string => (digits === null ? 'Bina
 export function emComputation(point: EmPoint): BudgetLine[] {
   const { quadrature, rounding } = emUncertainty(point);
   return [
-    { component: 'Quadrature over time', id: 'E01', group: 'computation', u: quadrature, note: 'Local polynomials of order 8 against 6; half-width over √3.' },
+    { component: 'Quadrature over time', id: 'E01', group: 'computation', u: quadrature, note: 'Local polynomials of order 8 against 6, and half of the samples; half-width over √3.' },
     { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: rounding, note: roundingNote(point.source.waveform.significantDigits) },
   ];
 }
@@ -40,7 +40,7 @@ function startLine({ source, scale }: EmPoint): BudgetLine {
 
 /**
  * Lines that are listed and decide coverage, never U.
- * Shape:  truncation, radius, start, modes, background.
+ * Shape:  truncation, radius, start, modes.
  * Units:  fraction of M.
  * Error:  estimates; what one file cannot show is null.
  * Fails:  never.

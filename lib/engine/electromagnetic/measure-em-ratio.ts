@@ -17,13 +17,16 @@ import { pointsOf } from './measure-em-energy';
 
 const ratioOf = ({ em, gw }: RatioPoint): number => emEnergyA(em) / gw.outcome.value;
 
+/** Said once for both files. */
+const SHARED = new Set(['E05', 'E06']);
+
 /** Lines of both energies, each by its relative size; coverage or computation as asked. */
 function linesOf(point: RatioPoint, group: BudgetLine['group']): BudgetLine[] {
   const { em, gw } = point;
   const value = ratioOf(point);
   const light = group === 'computation' ? emComputation(em) : emCoverage(em);
   const measuring = { recipe: energyRecipe, point: gw.point, store: gw.store, digits: gw.completed.waveform.significantDigits };
-  const waves = radiationBudget(measuring, gw.outcome).filter((line) => line.group === group);
+  const waves = radiationBudget(measuring, gw.outcome).filter((line) => line.group === group && !SHARED.has(line.id));
   return [...carried(light, emEnergyA(em), value, 'electromagnetic'), ...carried(waves, gw.outcome.value, value, 'gravitational')];
 }
 

@@ -8,6 +8,8 @@ export interface ModesText {
   readonly t: Float64Array;
   readonly modes: readonly Mode[];
   readonly significantDigits: number;
+  /** What the modes are, for the header; r h / M where nothing is said. */
+  readonly of?: string;
 }
 
 /** Caution 16: the signals are stylised, and a file may travel without the page it came from. */
@@ -18,13 +20,13 @@ export const modeColumns = (modes: readonly Mode[]): string[] => ['t', ...modes.
 /**
  * Text columns of a mode set, with a header that carries the watermark.
  * Shape:  header lines start with '#'; the last of them names the columns `t re22 im22 …`.
- * Units:  t in M, samples rh/M.
+ * Units:  t in M, samples rh/M or what `of` says.
  * Error:  samples rounded to `significantDigits`; times as the shortest decimal of twelve digits.
  * Fails:  never.
  * Source: claim sheet, layout of text columns.
  */
-export function formatModesText({ title, notes, t, modes, significantDigits }: ModesText): string {
-  const header = [title, watermark, ...notes, 'time in M, modes of r h / M', modeColumns(modes).join(' ')].map((line) => `# ${line}`);
+export function formatModesText({ title, notes, t, modes, significantDigits, of = 'r h / M' }: ModesText): string {
+  const header = [title, watermark, ...notes, `time in M, modes of ${of}`, modeColumns(modes).join(' ')].map((line) => `# ${line}`);
   const lines: string[] = [];
   for (let i = 0; i < t.length; i++) {
     const cells = [shortest(t[i]!)];
