@@ -17,7 +17,7 @@ const over = (x: Complex, y: Complex): Complex => by(1 / (y.re * y.re + y.im * y
 const turned = (x: Complex): Complex => c(-x.im, x.re);
 
 type Row = (n: number) => Complex;
-const TERMS = 400;
+const TERMS = 200;
 
 /** β₀ − α₀γ₁/(β₁ − α₁γ₂/(…)) inverted at index k: the tail from above less the finite fraction from below. */
 function fraction(alpha: Row, beta: Row, gamma: Row, k: number): Complex {
@@ -80,7 +80,7 @@ export function kerrTones(l: number, m: number, spins: readonly number[]): { rea
   let state: [Complex, Complex] = [schwarzschild[l]!, c(l * (l + 1) - S * (S + 1))];
   let here = 0;
   return spins.map((spin) => {
-    const steps = Math.max(1, Math.ceil(Math.abs(spin - here) / 0.05));
+    const steps = Math.max(1, Math.ceil(Math.abs(spin - here) / 0.1));
     for (let i = 1; i <= steps; i++) state = solved(l, m, (here + ((spin - here) * i) / steps) / 2, state);
     here = spin;
     const [w] = state;

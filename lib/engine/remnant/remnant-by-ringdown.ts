@@ -62,7 +62,7 @@ function recipeOf(which: RemnantNumber, request: MeasureRequest): ToneRecipe<Rin
  * Mass or spin of the hole that rings as this mode does (Q16, method `ringdown`).
  * Shape:  see Measurement.
  * Units:  mass in M, spin dimensionless.
- * Error:  of the two lines, carried through the inversion; that of the table is 4e-5.
+ * Error:  of the two lines, carried through the inversion; that of the table is 4e-5 for spins above 0.4.
  * Fails:  notComputable with the findings that say why.
  * Source: Q18; settings.md section 5.
  */

@@ -44,7 +44,7 @@ function bySecants(mode: TabulatedMode, wanted: number): number {
  * Mass and spin of the hole whose fundamental tone this is: spin from ω_R/ω_I, mass from ω_R.
  * Shape:  one line of one tabulated mode.
  * Units:  rates in 1/M; mass in M.
- * Error:  that of the table: 4e-5 in spin and mass for spins from 0 to 0.95.
+ * Error:  that of the table: 5e-5 in mass; 4e-5 in spin from 0.4 to 0.95, 2e-4 below.
  * Fails:  null where the table holds no such ratio.
  * Source: Q18 inverted; domain reference, Q16 (route B there) and appendix D.
  */
