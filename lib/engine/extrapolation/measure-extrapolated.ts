@@ -1,10 +1,11 @@
 import type { BudgetLine, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
+import type { Waveform } from '../contract/waveform';
 import { usedSettings } from '../tones/used-rows';
 import { limitByWeights, orderByNewton } from './order-by-newton';
 import { orderOfValues, richardsonValue, type OfThree, type Spacings } from './richardson';
-import type { RunScalar } from './run-scalar';
-import { chosenLines, propagatedLines, sensitivities } from './series-budget';
+import type { Meter, RunScalar } from './run-scalar';
+import { chosenLines, otherRespectLine, propagatedLines, sensitivities } from './series-budget';
 import { approachFigure } from './series-figures';
 import { named, noOrder, short, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
@@ -37,8 +38,6 @@ function truncationLine(errorEstimate: number, { factor, why }: ReturnType<typeo
   return { component: 'Simulation truncation error', id: 'E05', group: 'coverage', u: errorEstimate, degreesOfFreedom: runs - 1, note: `${factor} times the distance of the limit from the finest run, since ${why}.` };
 }
 
-const radiusLine: BudgetLine = { component: 'Extraction radius', id: 'E06', group: 'coverage', u: null, note: 'Not available: one radius.' };
-
 /**
  * Carries the numbers of the finest runs to zero spacing.
  * Shape:  see Measurement; one point.
@@ -59,11 +58,13 @@ export const measureExtrapolated =
     if (!isMeter(meter)) return stopped(meter);
     const read = readRuns(meter, runs, stepper(watch, runs.length));
     if (!areNumbers(read)) return stopped(read);
-    return carried({ request, observable, unit: unitOfObservable(observable), formalOrder, names: named(waveformsOfRuns(runs)), spacings: runs.map(({ place }) => place), read, spaced: [...findings, ...read.flatMap((run) => run.findings)] });
+    return carried({ request, leader, meter, observable, unit: unitOfObservable(observable), formalOrder, names: named(waveformsOfRuns(runs)), spacings: runs.map(({ place }) => place), read, spaced: [...findings, ...read.flatMap((run) => run.findings)] });
   };
 
 interface Carried {
   readonly request: MeasureRequest;
+  readonly leader: Waveform;
+  readonly meter: Meter;
   readonly observable: string;
   readonly unit: string;
   readonly formalOrder: number | undefined;
@@ -79,7 +80,7 @@ function reasonOf(values: readonly number[], spacings: readonly number[]): strin
   return found === null || found.ok ? 'are two, which show no order' : found.error;
 }
 
-function carried({ request, observable, unit, formalOrder, names, spacings, read, spaced }: Carried): Measurement {
+function carried({ request, leader, meter, observable, unit, formalOrder, names, spacings, read, spaced }: Carried): Measurement {
   const values = read.map(({ A }) => A);
   const measured = measuredOrder(values, spacings);
   const order = formalOrder ?? measured;
@@ -99,9 +100,9 @@ function carried({ request, observable, unit, formalOrder, names, spacings, read
       byRouteB: limitByWeights(byB.at(-2)!, byB.at(-1)!, hMiddle, hFinest, formalOrder ?? orderB(byB, spacings)),
       components: { order, finest, errorEstimate, ...(formalOrder === undefined ? {} : { measuredOrder: measured }) },
       budget: () => [
-        ...propagatedLines(sensitivities(limitAt, values).map((c, i) => ({ c, scalar: read[i]! })), value, 'Carried from the runs to the limit.'),
+        ...propagatedLines({ scalars: read, from: limitAt, value, moves: sensitivities(limitAt, values) }, 'Carried from the runs to the limit.'),
         truncationLine(errorEstimate, safety, values.length),
-        radiusLine,
+        otherRespectLine('radius', leader, finest, request.inputs.of.series ?? [], meter),
         ...chosenLines(last),
       ],
       findings: spaced,

@@ -152,8 +152,8 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
       byRouteB: orderByNewton((b1 - b2) / (b2 - b3), spacings),
       components: { ...besides(runs, request), coarseDifference: values[0] - values[1], fineDifference: values[1] - values[2] },
       budget: () => {
-        const shares = sensitivities(orderAt, values).map((c, i) => ({ c, scalar: read[i]! }));
-        return [...propagatedLines(shares, order, 'Carried from the runs to the order.'), fourthRunLine(order, scalarBefore(spaced, meter, values))];
+        const made = { scalars: read, from: orderAt, value: order, moves: sensitivities(orderAt, values) };
+        return [...propagatedLines(made, 'Carried from the runs to the order.'), fourthRunLine(order, scalarBefore(spaced, meter, values))];
       },
       findings: seen,
       used: { settings: [...own.settings, ...last.settings], assumed: [...own.assumed, ...last.assumed] },

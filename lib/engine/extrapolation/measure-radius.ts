@@ -8,7 +8,7 @@ import { fitInInverseRadius } from './radius-fit';
 import { fitByReflections } from './radius-fit-by-reflections';
 import type { Meter, RunScalar } from './run-scalar';
 import { isSamePlace, runsApart, type Run, type Runs } from './runs';
-import { chosenLines, propagatedLines } from './series-budget';
+import { chosenLines, otherRespectLine, propagatedLines } from './series-budget';
 import { approachFigure } from './series-figures';
 import { leftOutFindings, named, radiusFindings, short, timeLabelFindings, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
@@ -45,8 +45,6 @@ function radiusLine(value: number, previous: number | null, check: number | null
   const other = check === null ? '' : `; perturbation theory from the largest radius gives ${short(check, 6)}`;
   return { ...base, u: Math.max(...apart) / ROOT3, note: `Degree ${degree - 1} gives ${previous === null ? 'nothing' : short(previous, 6)}${other}. The larger distance as a half-width over √3.` };
 }
-
-const resolutionLine: BudgetLine = { component: 'Simulation truncation error', id: 'E05', group: 'coverage', u: null, note: 'Not available: one resolution.' };
 
 /** Radii that nobody said to be areal are taken for such. */
 function typeRows(runs: readonly Run[]): { readonly settings: UsedSetting[]; readonly assumed: string[] } {
@@ -106,7 +104,7 @@ function perturbative({ request, runs, meter, step }: Fitted): number | null {
 }
 
 function fitted(given: Fitted): Measurement {
-  const { request, observable, unit, degree, runs, read, findings } = given;
+  const { request, observable, unit, degree, runs, read, meter, findings } = given;
   const radii = runs.map(({ place }) => place);
   const values = read.map(({ A }) => A);
   const fit = fitInInverseRadius(radii, values, degree);
@@ -122,8 +120,8 @@ function fitted(given: Fitted): Measurement {
       byRouteB: fitByReflections(radii, read.map(({ B }) => B), degree)[0]!,
       components: { previousOrder, largestRadius: values.at(-1)!, checkPerturbative: check },
       budget: () => [
-        ...propagatedLines(weightsOf(radii, degree).map((c, i) => ({ c, scalar: read[i]! })), value, 'Carried from the radii to infinity.'),
-        resolutionLine,
+        ...propagatedLines({ scalars: read, from: (x) => atInfinityBy(radii, x, degree), value, moves: weightsOf(radii, degree) }, 'Carried from the radii to infinity.'),
+        otherRespectLine('resolution', runs.at(-1)!.waveform, values.at(-1)!, request.inputs.of.series ?? [], meter),
         radiusLine(value, previousOrder, check, degree),
         ...chosenLines(last),
       ],

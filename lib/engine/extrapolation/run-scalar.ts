@@ -9,7 +9,7 @@ import { floorRows, usedSettings } from '../tones/used-rows';
 import { relativeSlip } from '../radiation/input-rounding';
 import { followRuns, type Followed, type FollowedRun } from './followed-runs';
 import { mirroredFindings } from './series-findings';
-import { atPeakOnSamples, atPeakOnSplines, type AtPeak } from './tone-at-peak';
+import { atPeakOnSamples, atPeakOnSplines, turnOfPeak, type AtPeak } from './tone-at-peak';
 import type { Tone } from '../tones/tone';
 
 /** One number of one run, by both routes. */
@@ -18,6 +18,8 @@ export interface RunScalar {
   readonly B: number;
   /** Lines that make U. */
   readonly computation: readonly BudgetLine[];
+  /** The number with one knob turned, by the id of its line: what it does to all runs alike may cancel. */
+  readonly turned?: ReadonlyMap<string, number>;
   readonly coverage: readonly BudgetLine[];
   readonly findings: readonly Finding[];
   readonly settings: readonly UsedSetting[];
@@ -67,16 +69,22 @@ const ROOT3 = Math.sqrt(3);
 /** Relative size below which no computation in double precision is trusted (engine design). */
 const LEAST = 1e-13;
 
-function computationOf({ tones, peakTones, startM, waveform }: FollowedRun, endM: number, value: number, which: PeakNumber): BudgetLine[] {
-  const reading = (tone: Tone, peakTone: Tone) => ({ tone, peakTone, startM, endM });
-  const size = (found: AtPeak): number => Math.max(Math.abs(found[which] - value) / ROOT3, LEAST * Math.abs(value));
-  const integration: BudgetLine[] = tones.floor === null ? [] : [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: size(atPeakOnSamples(reading(tones.coarse, peakTones.coarse))), note: 'Interpolation of order 8 against 6 and half the points.' }];
+/** Route A with one knob turned, by the id of the budget's line. */
+function turnedOf({ tones, peakTones, startM }: FollowedRun, endM: number, which: PeakNumber): ReadonlyMap<string, number> {
+  const by = (tone: Tone, peakTone: Tone, order: 6 | 8): number => atPeakOnSamples({ tone, peakTone, startM, endM }, order)[which];
+  return new Map([['E01', by(tones.A, peakTones.A, 6)], ...(tones.floor === null ? [] : ([['E02', by(tones.coarse, peakTones.coarse, 8)]] as const))]);
+}
+
+function computationOf({ tones, peakTones, waveform }: FollowedRun, here: AtPeak, turned: ReadonlyMap<string, number>, which: PeakNumber): BudgetLine[] {
+  const value = here[which];
+  const size = (id: string): number => Math.max(Math.abs((turned.get(id) ?? Number.NaN) - value) / ROOT3, LEAST * Math.abs(value));
+  const integration: BudgetLine[] = tones.floor === null ? [] : [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: size('E02'), note: 'Interpolation of order 8 against 6 and half the points.' }];
   const digits = waveform.significantDigits;
   const slip = digits === null ? 0 : relativeSlip(digits);
   return [
-    { component: 'Interpolation and time of the peak', id: 'E01', group: 'computation', u: size(atPeakOnSamples(reading(tones.A, peakTones.A), 6, 'parabola')), note: 'Local polynomials of order 8 against 6, peak by a polynomial against the five-sample parabola; half-width over √3.' },
+    { component: 'Interpolation and time of the peak', id: 'E01', group: 'computation', u: size('E01'), note: 'Local polynomials of order 8 against 6; half-width over √3.' },
     ...integration,
-    { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: which === 'amplitude' ? slip * Math.abs(value) : Math.SQRT2 * slip, note: digits === null ? 'Binary doubles: nothing was printed.' : `${digits} significant digits in the file.` },
+    { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: which === 'amplitude' ? slip * Math.abs(value) : Math.hypot(Math.SQRT2 * slip, turnOfPeak(tones.A, peakTones.A, here.timeM, slip)), note: digits === null ? 'Binary doubles: nothing was printed.' : `${digits} significant digits in the file.` },
   ];
 }
 
@@ -111,7 +119,9 @@ export function meterAtPeak(which: PeakNumber, followed: Followed, request: Meas
         request,
       );
       const looks = request.routeAOnly === true;
-      return { A: A[which], B: looks ? Number.NaN : B()[which], computation: looks ? [] : computationOf(run, endM, A[which], which), coverage: [], findings: runFindings(run, followed), settings, assumed };
+      if (looks) return { A: A[which], B: Number.NaN, computation: [], coverage: [], findings: runFindings(run, followed), settings, assumed };
+      const turned = turnedOf(run, endM, which);
+      return { A: A[which], B: B()[which], computation: computationOf(run, A, turned, which), turned, coverage: [], findings: runFindings(run, followed), settings, assumed };
     },
     looked: (waveform) => {
       const again = followRuns([waveform], waveform, { ...request.settings, ...(mode === null ? {} : { modes: [mode] }) });

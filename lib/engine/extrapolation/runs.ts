@@ -23,7 +23,8 @@ export interface Runs {
   readonly unplaced: readonly Waveform[];
 }
 
-const placeOf = (apart: Apart, waveform: Waveform): number | null => (apart === 'resolution' ? (waveform.resolution ?? null) : areal(waveform));
+/** Grid spacing, or areal radius, as far as the sheet says. */
+export const placeOf = (apart: Apart, waveform: Waveform): number | null => (apart === 'resolution' ? (waveform.resolution ?? null) : areal(waveform));
 
 /** Closer than this is the same place. */
 const SAME = 1e-9;

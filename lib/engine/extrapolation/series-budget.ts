@@ -1,33 +1,49 @@
+import { unavailable } from '../budget/relatives';
+import { radiusError, truncationError } from '../budget/simulation-error';
 import type { BudgetLine } from '../contract/measurement';
-import type { RunScalar } from './run-scalar';
-
-interface Share {
-  /** How much the result moves with this run's number. */
-  readonly c: number;
-  readonly scalar: RunScalar;
-}
+import type { Waveform } from '../contract/waveform';
+import type { Meter, RunScalar } from './run-scalar';
+import { isSamePlace, placeOf, type Apart } from './runs';
 
 /** Relative size below which no computation in double precision is trusted (engine design). */
 const LEAST = 1e-13;
+const ROOT3 = Math.sqrt(3);
+
+/** A number made of the runs' numbers. */
+export interface Made {
+  readonly scalars: readonly RunScalar[];
+  readonly from: (values: readonly number[]) => number;
+  readonly value: number;
+  /** How much it moves with each of them. */
+  readonly moves: readonly number[];
+}
+
+/** What one knob does to the result when it is turned in all runs at once; null where a run does not tell. */
+function turnedTogether({ scalars, from, value }: Made, id: string): number | null {
+  const values = scalars.map(({ turned }) => turned?.get(id));
+  return values.every((x) => x !== undefined) ? Math.abs(from(values) - value) / ROOT3 : null;
+}
 
 /**
- * Lines that make U of a number that is a function of several runs' numbers. What one knob does to each run may go either way
- * in all of them, so sizes are added; printed digits of different files are independent.
+ * Lines that make U of a number that is made of several runs' numbers. Where it is not known what a knob does to all runs
+ * together, sizes are added; printed digits of different files are independent.
  * Shape:  one line for each that any run has, in the order of the first.
  * Units:  those of the result.
  * Error:  errs on the large side.
  * Fails:  a size that is not known makes its line unknown.
  * Source: JCGM 100:2008, 5.2.
  */
-export function propagatedLines(shares: readonly Share[], value: number, how: string): BudgetLine[] {
+export function propagatedLines(made: Made, how: string): BudgetLine[] {
+  const { scalars, value, moves } = made;
   const keys = new Map<string, BudgetLine>();
-  for (const { scalar } of shares) for (const line of scalar.computation) if (!keys.has(line.id + line.component)) keys.set(line.id + line.component, line);
+  for (const { computation } of scalars) for (const line of computation) if (!keys.has(line.id + line.component)) keys.set(line.id + line.component, line);
   return [...keys].map(([key, { component, id, group, note }]): BudgetLine => {
-    const sizes = shares.map(({ c, scalar }) => {
-      const own = scalar.computation.find((line) => line.id + line.component === key);
-      return own === undefined ? 0 : Math.abs(c) * (own.u ?? Number.NaN);
+    const sizes = scalars.map(({ computation }, i) => {
+      const own = computation.find((line) => line.id + line.component === key);
+      return own === undefined ? 0 : Math.abs(moves[i]!) * (own.u ?? Number.NaN);
     });
-    const u = id === 'rounding' ? Math.hypot(...sizes) : Math.max(sizes.reduce((sum, size) => sum + size, 0), id === 'E01' ? LEAST * Math.abs(value) : 0);
+    const together = turnedTogether(made, id) ?? sizes.reduce((sum, size) => sum + size, 0);
+    const u = id === 'rounding' ? Math.hypot(...sizes) : Math.max(together, id === 'E01' ? LEAST * Math.abs(value) : 0);
     return { component, id, group, u, note: `${note} ${how}` };
   });
 }
@@ -54,3 +70,28 @@ const OWN = new Set(['E05', 'E06']);
 
 /** What was chosen for the leading run stands for all; truncation and radius have lines of the series' own. */
 export const chosenLines = ({ coverage }: RunScalar): BudgetLine[] => coverage.filter(({ id }) => !OWN.has(id));
+
+/**
+ * What the series says of the respect in which it was not carried to a limit: E05 beside a limit in the radius, E06 beside one in
+ * the spacing, from runs that stand with the leading one in all else.
+ * Shape:  one line.
+ * Units:  those of the number.
+ * Error:  an estimate.
+ * Fails:  null where the series holds no such run.
+ * Source: domain reference 5.1.
+ */
+export function otherRespectLine(kind: Apart, leader: Waveform, here: number, series: readonly Waveform[], meter: Meter): BudgetLine {
+  const other: Apart = kind === 'resolution' ? 'radius' : 'resolution';
+  const own = placeOf(kind, leader);
+  const others = series.flatMap((waveform) => {
+    const place = placeOf(kind, waveform);
+    if (own === null || place === null || isSamePlace(place, own) || placeOf(other, waveform) !== placeOf(other, leader)) return [];
+    const value = meter.looked(waveform);
+    return value === null ? [] : [{ value, place, isOwn: false }];
+  });
+  if (own === null || others.length === 0) return unavailable(kind);
+  const runs = [{ value: here, place: own, isOwn: true }, ...others];
+  const found = kind === 'resolution' ? truncationError(runs, null) : radiusError(runs);
+  const { component, id, group } = unavailable(kind);
+  return found === null ? unavailable(kind) : { component, id, group, u: Math.abs(found.u), note: found.note, ...(found.degreesOfFreedom === undefined ? {} : { degreesOfFreedom: found.degreesOfFreedom }) };
+}

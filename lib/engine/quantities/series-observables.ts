@@ -1,5 +1,7 @@
 import type { Follows, Quantity, QuantityInputs } from '../contract/quantity';
 import type { DeclaredSettings, Observable, SettingName } from '../contract/settings';
+import { cycles } from './cycles';
+import { eccentricity } from './eccentricity';
 import { peakLuminosity } from './peak-luminosity';
 import { radiatedAngularMomentum } from './radiated-angular-momentum';
 import { radiatedEnergy } from './radiated-energy';
@@ -10,7 +12,7 @@ import { ringdownDamping } from './ringdown-damping';
 import { ringdownFrequency } from './ringdown-frequency';
 
 /** Numbers of one waveform (settings.md section 5) that a series can be measured in. */
-export const scalars: ReadonlyMap<string, Quantity> = new Map([radiatedEnergy, radiatedAngularMomentum, recoil, peakLuminosity, remnantMass, remnantSpin, ringdownFrequency, ringdownDamping].map((quantity) => [quantity.id, quantity]));
+export const scalars: ReadonlyMap<string, Quantity> = new Map([radiatedEnergy, radiatedAngularMomentum, recoil, peakLuminosity, remnantMass, remnantSpin, ringdownFrequency, ringdownDamping, cycles, eccentricity].map((quantity) => [quantity.id, quantity]));
 
 const curveSettings: readonly SettingName[] = ['modes', 'window', 'startM', 'integrationFloor'];
 const peakSettings: readonly SettingName[] = ['modes', 'startM', 'integrationFloor'];

@@ -79,6 +79,26 @@ export function withResolutionError<T extends Modes>(wave: T, error: ResolutionE
   });
 }
 
+/** Terms in 1/r of appendix 7: 1.4 % of the amplitude and 0.05 rad of (2,2) at 100 M. */
+const FINITE_RADIUS = { a1: -1.5, a2: 8, b1: 2.5 } as const;
+
+/**
+ * A stand-in for extraction at a finite radius.
+ * Shape:  same axis and modes; H_{ℓm} is multiplied by (1 + a₁/r + a₂/r²) e^{imb₁/r}.
+ * Units:  areal radius in M.
+ * Error:  none, closed form; the terms are invented, and obey no wave equation.
+ * Fails:  never.
+ * Source: domain reference, section 7, synthesis details.
+ */
+export function withFiniteRadius<T extends Modes>(wave: T, radiusM: number): T {
+  const { a1, a2, b1 } = FINITE_RADIUS;
+  const gain = 1 + a1 / radiusM + a2 / radiusM ** 2;
+  return scaled(wave, ({ m }) => {
+    const angle = (m * b1) / radiusM;
+    return [gain * Math.cos(angle), gain * Math.sin(angle)];
+  });
+}
+
 /** sin²(πx/2) on 0…1: no corner at either end, so the drift adds no power of its own. */
 export const smoothStep = (x: number): number => Math.sin((Math.PI / 2) * Math.min(Math.max(x, 0), 1)) ** 2;
 

@@ -62,6 +62,9 @@ function parabolaVertex(axis: Float64Array, values: Float64Array, i: number): nu
   return axis[i]! - slope / (2 * bend);
 }
 
+/** By a local polynomial of order 8, one of order 6, or the parabola through five samples. */
+export type PeakBy = 'polynomial' | 'shorter polynomial' | 'parabola';
+
 /**
  * Route A: time of the largest |H|, where the local polynomial of |H|² has slope zero; by the
  * five-sample parabola of rule 2.10 when that is asked for.
@@ -71,7 +74,7 @@ function parabolaVertex(axis: Float64Array, values: Float64Array, i: number): nu
  * Fails:  null.
  * Source: settings.md rule 2.10.
  */
-export function peakOnSamples(tone: Tone, by: 'polynomial' | 'parabola' = 'polynomial'): number | null {
+export function peakOnSamples(tone: Tone, by: PeakBy = 'polynomial'): number | null {
   const power = powerOf(tone);
   const top = highest(power);
   if (top === null) return null;
@@ -79,8 +82,9 @@ export function peakOnSamples(tone: Tone, by: 'polynomial' | 'parabola' = 'polyn
   const values = powerOf(near);
   const i = near.axis.indexOf(tone.axis[top]!);
   if (by === 'parabola' || near.axis.length < 9) return parabolaVertex(near.axis, values.map(Math.sqrt), i);
-  const { slopes } = derivativesAtSamples(near.axis, [values], 9);
-  const slopeAt = (t: number): number => interpolatePair({ axis: near.axis, first: slopes[0]!, second: values }, { t0: t, dt: 1, n: 1 }, 8)[0][0]!;
+  const order = by === 'polynomial' ? 8 : 6;
+  const { slopes } = derivativesAtSamples(near.axis, [values], order + 1);
+  const slopeAt = (t: number): number => interpolatePair({ axis: near.axis, first: slopes[0]!, second: values }, { t0: t, dt: 1, n: 1 }, order)[0][0]!;
   return fallingZero(slopeAt, near.axis[i - 1]!, near.axis[i + 1]!);
 }
 
