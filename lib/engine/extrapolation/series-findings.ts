@@ -32,7 +32,8 @@ export const noOrder = (where: string, text: string, fix: string): Finding => ({
 /** V26 for the number of resolutions. */
 export function fewResolutions(runs: readonly Run[], where: string, taken: string): Finding[] {
   if (runs.length >= 3) return [];
-  return [{ code: 'engine/few-resolutions', level: 'worth-a-look', where, text: `${runs.length === 2 ? 'Two resolutions' : 'One resolution'}: no order can be measured${taken}.`, fix: 'Supply a third resolution.' }];
+  const spacings = runs.map(({ place }) => `${short(place)} M`).join(' and ');
+  return [{ code: 'engine/few-resolutions', level: 'worth-a-look', where, text: `${runs.length === 2 ? `Two resolutions, ${spacings}` : `One resolution, ${spacings}`}: no order can be measured${taken}.`, fix: 'Supply a third resolution.' }];
 }
 
 const firstTime = ({ axis }: Waveform): number => axis[0]!;

@@ -33,6 +33,21 @@ export const furtherRows: readonly CatalogueRow[] = [
     advice: 'Supply another resolution, or claim the difference of the two best runs.',
   },
   {
+    code: 'engine/runs-left-out', numbers: [], part: 'runs', levels: [{ level: 'note' }], concerns: 'orders and extrapolations',
+    rule: 'The series holds runs that differ in resolution and in radius; those that differ in one of them alone are compared.',
+    advice: 'Nothing, if these are the runs that are meant; else give them a series of their own.',
+  },
+  {
+    code: 'engine/coordinate-radius', numbers: [], part: 'runs', levels: look, concerns: 'radius extrapolation',
+    rule: 'Radii are stated as coordinate radii and used as they stand; a coordinate radius may lie some M off the areal one.',
+    advice: 'State areal radii.',
+  },
+  {
+    code: 'engine/time-label', numbers: [], part: 'runs', levels: look, concerns: 'radius extrapolation',
+    rule: 'Times are coordinate times, and the number begins or ends at a stated time: at each radius that is another moment of the source.',
+    advice: 'Give the records against retarded time, or a junkEndM for each.',
+  },
+  {
     code: 'engine/fit-beyond-range', numbers: [], part: 'facts', levels: look, concerns: 'published fits',
     rule: 'The mass ratio or a spin lies beyond the simulations from which a fit was made.',
     advice: 'Say in the statement that the fit is extrapolated.',
@@ -70,7 +85,7 @@ export const furtherRows: readonly CatalogueRow[] = [
   stop('engine/normaliser-missing', 'sums over modes; ringdown', 'The number is referred to a mass that the sheet does not state.', 'State it under "binary", or refer the number to M.'),
   stop('engine/start-missing', 'remnant mass and spin', 'The balance begins with values that the sheet does not state.', 'State admEnergy and admAngularMomentum, or declare method: balance-pn.'),
   stop('engine/fit-not-applicable', 'published fits', 'The fit does not give this number, or was made for bodies without spin.', 'Declare fit: mean, or another fit.'),
-  stop('engine/no-order', 'order of convergence', 'There are fewer than three resolutions, equal spacings, or no positive order up to 20.', 'Supply three different resolutions.'),
+  stop('engine/no-order', 'orders and extrapolations', 'There are fewer than three resolutions, unknown or equal spacings, differences no larger than rounding, or no positive order up to 20.', 'Supply three different resolutions; for an extrapolation declare formalOrder.'),
   stop('engine/no-field', 'electromagnetic energies', 'Rescaling is asked for and the field or mass of the computation is not stated.', 'State fieldGauss and totalMassMsun beside the file.'),
   stop('engine/defect', 'all', 'The computation met a condition that it does not foresee. It fails closed; other claims of the sheet go on.', 'It is a fault of the program: report it with the sheet.'),
 ];

@@ -172,7 +172,7 @@ const numbered: readonly CatalogueRow[] = [
     advice: 'Supply a third resolution; until then the error is taken as three times the difference.',
   },
   {
-    code: 'engine/few-radii', numbers: ['V27'], part: 'runs', levels: look, concerns: 'radius extrapolation',
+    code: 'engine/few-radii', numbers: ['V27'], part: 'runs', levels: [{ level: 'stops-lodging', when: 'no radius stated, or not two more than the degree of the polynomial' }, { level: 'worth-a-look' }], concerns: 'radius extrapolation',
     rule: 'Fewer than four radii, or radii that span less than a factor of two.',
     advice: 'Supply at least four radii over a factor of two.',
   },
