@@ -30,8 +30,9 @@ export function parseNoise(name: string, value: unknown, curves: readonly string
   const file = raw.file ?? '';
   const fault = pathProblem(file, pointer(...path, 'file'));
   if (fault) problems.push(fault);
-  if (formatByEnding(file) !== 'text') problems.push({ code: 'formats/not-read-yet', where: pointer(...path, 'file'), saw: `a file in the format ${formatByEnding(file)}`, expected: 'text', hint: 'This version reads text columns; export the curve as text.' });
+  const format = formatByEnding(file);
+  if (format !== 'text' && format !== 'npy') problems.push({ code: 'claims/not-allowed', where: pointer(...path, 'file'), saw: `a file in the format ${format}`, expected: 'a curve as text or as an .npy of N×2 numbers', hint: 'Export the curve as text.' });
   if (raw.columns === undefined) problems.push({ code: 'claims/missing', where: pointer(...path, 'columns'), saw: 'nothing', expected: 'the columns of the text file, such as ["f", "asd"]' });
   const columns = noiseColumns(raw.columns ?? ['f', 'asd'], [...path, 'columns'], problems);
-  return problems.length > before ? null : { kind: 'table', name, file, columns, sided: raw.sided ?? 'one' };
+  return problems.length > before ? null : { kind: 'table', name, file, format: format === 'npy' ? 'npy' : 'text', columns, sided: raw.sided ?? 'one' };
 }

@@ -31,11 +31,13 @@ export const binarySchema = z.strictObject({
   fieldGauss: positive('a field in gauss above zero').optional(),
 }, { error: 'an object of facts about the binary' });
 
+const evenAxis = z.strictObject({ start: finite('where the axis begins'), step: positive('a step above zero') });
+
 export const waveformSchema = z.strictObject({
   file: path.optional(),
   files: z.record(z.string(), path, { error: 'an object such as {"2,2": "l2_m2.txt"}' }).optional(),
   datasets: z.record(z.string(), z.string(), { error: 'an object such as {"2,2": "/path"}' }).optional(),
-  time: text(300).optional(),
+  time: z.union([text(300), evenAxis], { error: 'the path of a dataset, or even steps such as {"start": 0, "step": 0.1}' }).optional(),
   format: oneOf(['text', 'npy', 'npz', 'hdf5']).optional(),
   domain: oneOf(['time', 'frequency']).optional(),
   variable: oneOf(['strain', 'news', 'psi4', 'phi2', 'luminosity']).optional(),

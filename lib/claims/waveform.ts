@@ -1,6 +1,8 @@
+import type { ArrayLayout } from '@/lib/engine/contract/array-layout';
 import type { Column, RunFacts, SourceFile, WaveformDeclaration } from '@/lib/engine/contract/layout';
 import type { ModeIndex } from '@/lib/engine/contract/settings';
 import type { Problem } from '@/lib/kernel/problem';
+import { arrayWords } from './arrays';
 import { checkPart } from './check-part';
 import { layoutProblems, modeFaults, waveformColumns } from './columns';
 import { pathProblem } from './file-path';
@@ -19,18 +21,20 @@ export function parseWaveform(name: string, value: unknown, problems: Problem[])
   const before = problems.length;
   problems.push(...kindProblems(raw, path), ...unitProblems(raw, path));
   const files = filesOf(raw, path, problems);
-  const columns = columnsOf(raw, path, problems);
+  const format = formatOf(raw);
+  const { columns, arrays } = format === 'text' ? { columns: columnsOf(raw, path, problems), arrays: null } : arrayWords(raw, format, leastL(raw), path, problems);
   if (problems.length > before) return null;
-  return declarationOf(name, raw, files, columns);
+  return declarationOf(name, raw, files, columns, arrays);
 }
 
-function declarationOf(name: string, raw: RawWaveform, files: SourceFile[], columns: Column[]): WaveformDeclaration {
+function declarationOf(name: string, raw: RawWaveform, files: SourceFile[], columns: Column[], arrays: ArrayLayout | null): WaveformDeclaration {
   const domain = raw.domain ?? 'time';
-  const named = columns.some(({ role }) => 'mode' in role && role.mode !== null) || files.some(({ mode }) => mode !== null) || raw.mode !== undefined;
+  const named = columns.some(({ role }) => 'mode' in role && role.mode !== null) || files.some(({ mode }) => mode !== null) || raw.mode !== undefined || (arrays?.parts ?? []).some(({ role }) => role.kind === 'mode' || role.kind === 'data');
   return {
     name,
     files,
     columns,
+    arrays,
     domain,
     variable: raw.variable ?? 'strain',
     timeUnit: raw.timeUnit ?? (domain === 'time' ? 'M' : '1/M'),
@@ -54,14 +58,15 @@ const runOf = ({ series, resolution, extractionRadiusM, radiusType, timeLabel, t
 /** Without the `undefined` entries that zod's optional fields may carry. */
 const present = <T extends object>(facts: T): { [K in keyof T]?: NonNullable<T[K]> } => Object.fromEntries(Object.entries(facts).filter(([, fact]) => fact !== undefined)) as { [K in keyof T]?: NonNullable<T[K]> };
 
-/** What this version does not read or compute yet is refused by name, never guessed at. */
+const formatOf = (raw: RawWaveform): 'text' | 'npy' | 'npz' | 'hdf5' => raw.format ?? formatByEnding(raw.file ?? Object.values(raw.files ?? {})[0] ?? '');
+
 function kindProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
-  const problems: Problem[] = [];
-  const file = raw.file ?? Object.values(raw.files ?? {})[0] ?? '';
-  const format = raw.format ?? formatByEnding(file);
-  if (format !== 'text') problems.push({ code: 'formats/not-read-yet', where: pointer(...path, raw.format ? 'format' : 'file'), saw: `a file in the format ${format}`, expected: 'text', hint: 'This version reads text columns; export the series as text.' });
-  else if (raw.datasets !== undefined || raw.time !== undefined) problems.push(refused(pointer(...path, raw.datasets ? 'datasets' : 'time'), raw.datasets ?? raw.time, 'no dataset paths for a text file'));
-  return problems;
+  if (raw.format === undefined) {
+    const kinds = [...new Set(Object.values(raw.files ?? {}).map(formatByEnding))];
+    if (kinds.length > 1) return [refused(pointer(...path, 'files'), raw.files, 'files of one format, by their endings or by "format"')];
+  }
+  if (formatOf(raw) !== 'text' || (raw.datasets === undefined && raw.time === undefined)) return [];
+  return [refused(pointer(...path, raw.datasets ? 'datasets' : 'time'), raw.datasets ?? raw.time, 'no dataset paths for a text file', 'If the file is of another format than its ending says, name it under "format".')];
 }
 
 export function formatByEnding(file: string): 'text' | 'npy' | 'npz' | 'hdf5' {

@@ -39,7 +39,7 @@ export async function openArchive(reader: Reader<unknown>, name: string, limits:
   }
 }
 
-async function listEntries(zip: ZipReader<unknown>, limits: ArchiveLimits): Promise<Entry[] | null> {
+export async function listEntries(zip: ZipReader<unknown>, limits: ArchiveLimits): Promise<Entry[] | null> {
   const entries: Entry[] = [];
   for await (const entry of zip.getEntriesGenerator({ filenameValidation: 'tolerant' })) {
     entries.push(entry);
@@ -48,10 +48,10 @@ async function listEntries(zip: ZipReader<unknown>, limits: ArchiveLimits): Prom
   return entries;
 }
 
-const isFile = (entry: Entry): entry is FileEntry => !entry.directory;
-const tooMany = (name: string, limits: ArchiveLimits): Problem => ({ code: 'formats/archive-too-large', where: name, saw: `more than ${limits.entries} entries`, expected: `at most ${limits.entries}` });
+export const isFile = (entry: Entry): entry is FileEntry => !entry.directory;
+export const tooMany = (name: string, limits: ArchiveLimits): Problem => ({ code: 'formats/archive-too-large', where: name, saw: `more than ${limits.entries} entries`, expected: `at most ${limits.entries}` });
 
-function archiveProblems(entries: readonly Entry[], name: string, limits: ArchiveLimits): Problem[] {
+export function archiveProblems(entries: readonly Entry[], name: string, limits: ArchiveLimits): Problem[] {
   const problems = entries.flatMap((entry) => entryProblems(entry, name, limits));
   const files = entries.filter(isFile);
   const total = files.reduce((sum, entry) => sum + entry.uncompressedSize, 0);
@@ -101,12 +101,14 @@ function sheetPrefix(names: readonly string[]): string | null {
   return inFolder.length === 1 ? (inFolder[0] ?? '').slice(0, -sheetName.length) : null;
 }
 
-async function* entryBytes(entry: FileEntry | undefined): AsyncGenerator<Uint8Array> {
+export async function* entryBytes(entry: FileEntry | undefined): AsyncGenerator<Uint8Array> {
   if (!entry) throw new FileRefused('no file of this name in the archive', 'the file beside claim.json', 'Add the file, or correct its name in the sheet.');
   const pipe = new TransformStream<Uint8Array, Uint8Array>();
   const stop = new AbortController();
   const written = entry.getData(pipe.writable, { signal: stop.signal, checkSignature: true }).then(() => null, (thrown: unknown) => thrown);
   const reader = pipe.readable.getReader();
+  // An entry that fails before its first byte leaves the pipe open: the waiting read is ended here.
+  void written.then((thrown) => (thrown === null ? undefined : reader.cancel().catch(() => undefined)));
   let bytes = 0;
   try {
     for (let part = await reader.read(); !part.done; part = await reader.read()) {

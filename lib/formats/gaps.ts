@@ -1,5 +1,7 @@
 import type { Finding } from '@/lib/engine/contract/finding';
 import { medianStep } from './axis';
+import { sayRow, whereRow } from './row-place';
+import type { NumberTable } from './text/table';
 
 /** The curve whose cycles a gap is measured in; `im` is null for a lone real column. */
 export interface WaveTrace {
@@ -13,7 +15,7 @@ const quiet = 1e-3;
 const reportedGaps = 5;
 
 /** V03: steps above one and a half medians, widest first, in the record's unit and in cycles of the wave there. */
-export function gapFindings(file: string, lineOfRow: (row: number) => number, axis: Float64Array, unit: string, trace: WaveTrace): Finding[] {
+export function gapFindings(table: NumberTable, axis: Float64Array, unit: string, trace: WaveTrace): Finding[] {
   const median = medianStep(axis);
   const wide: number[] = [];
   for (let i = 1; i < axis.length; i++) if (axis[i]! - axis[i - 1]! > wideSteps * median) wide.push(i);
@@ -22,13 +24,12 @@ export function gapFindings(file: string, lineOfRow: (row: number) => number, ax
   const gaps = wide.map((row) => ({ row, width: axis[row]! - axis[row - 1]!, cycles: cyclesAcross(axis, trace, row, peak) }));
   gaps.sort((a, b) => (b.cycles ?? Infinity) - (a.cycles ?? Infinity) || b.width - a.width || a.row - b.row);
   return gaps.slice(0, reportedGaps).map((gap, i) => {
-    const line = lineOfRow(gap.row);
     const needsAnswer = gap.cycles === null || gap.cycles > interpolatedCycles;
     return {
       code: 'formats/gap',
       level: needsAnswer ? 'needs-answer' : 'worth-a-look',
-      where: `${file}:${line}`,
-      text: `There is a gap of ${short(gap.width)} ${unit} at t = ${axis[gap.row - 1]} ${unit} (line ${line} of ${file}; the usual step is ${short(median)} ${unit}), ${inCycles(gap.cycles)}.${i === 0 && gaps.length > 1 ? ` ${gaps.length} steps in all are wider than 1.5 usual steps.` : ''}`,
+      where: whereRow(table, gap.row),
+      text: `There is a gap of ${short(gap.width)} ${unit} at t = ${axis[gap.row - 1]} ${unit} (${sayRow(table, gap.row)}; the usual step is ${short(median)} ${unit}), ${inCycles(gap.cycles)}.${i === 0 && gaps.length > 1 ? ` ${gaps.length} steps in all are wider than 1.5 usual steps.` : ''}`,
       fix: needsAnswer ? 'Gaps up to 0.1 cycle are interpolated; supply the missing samples, or say why this one does no harm.' : 'It is interpolated.',
     };
   });

@@ -13,7 +13,7 @@ interface PrintedColumn {
 /**
  * Significant digits of the amplitude columns, for the rounding component of the budget.
  * A column printed to fixed decimals shows fewer digits where it is small, so only columns near
- * the largest count; a phase of 1234.56 rad is rounded to 0.01 rad, which is what moves the wave.
+ * the largest count; numbers stored exactly have no end of digits; a phase of 1234.56 rad is rounded to 0.01 rad, which is what moves the wave.
  */
 export function printedDigits(tables: readonly NumberTable[], columns: readonly Column[]): number | null {
   const printed = tables.flatMap((table) => columns.flatMap((column, k) => printedColumn(table, column, k)));
@@ -21,7 +21,8 @@ export function printedDigits(tables: readonly NumberTable[], columns: readonly 
   const largest = Math.max(0, ...amplitudes.map((column) => column.peak));
   const telling = [...amplitudes.filter((column) => column.peak >= countsFrom * largest), ...printed.filter((column) => column.isPhase)];
   const digits = telling.filter((column) => column.peak > 0).map((column) => column.digits);
-  return digits.length > 0 ? Math.max(1, Math.min(...digits)) : null;
+  const least = Math.min(...digits);
+  return Number.isFinite(least) ? Math.max(1, least) : null;
 }
 
 function printedColumn(table: NumberTable, { role }: Column, k: number): PrintedColumn[] {

@@ -1,4 +1,5 @@
 import type { Finding } from '@/lib/engine/contract/finding';
+import type { ArrayLayout } from '@/lib/engine/contract/array-layout';
 import type { WaveformDeclaration } from '@/lib/engine/contract/layout';
 import type { LineOfSight, ModeSet, Waveform } from '@/lib/engine/contract/waveform';
 import type { Problem } from '@/lib/kernel/problem';
@@ -10,6 +11,9 @@ import { headerFindings } from './header-findings';
 import type { OpenFile } from './open-file';
 import { printedDigits } from './printed-digits';
 import { readTable } from './read-table';
+import { readArrays } from './arrays/read-arrays';
+import type { ReadHdf5 } from './hdf5/hdf5-ask';
+import { whereRow } from './row-place';
 import { monotoneFindings, notFiniteFindings } from './series-findings';
 import type { NumberTable } from './text/table';
 
@@ -20,7 +24,7 @@ export interface ReadWaveform {
 }
 
 /**
- * One waveform of a sheet, from its text files to house convention.
+ * One waveform of a sheet, from its files to house convention.
  * Shape:  all modes share one axis; files of one mode each must agree on it.
  * Units:  the file's own time and amplitude unit are kept (the mass that stretches them comes later).
  * Error:  none: doubles are read exactly and only signs and the ψ₄ factor are applied.
@@ -28,7 +32,8 @@ export interface ReadWaveform {
  *         that are not finite (V01) and time that does not go forward (V02).
  * Source: settings.md rules 2.1 and section 8.
  */
-export async function readWaveform(declaration: WaveformDeclaration, openFile: OpenFile): Promise<Result<ReadWaveform, Problem[]>> {
+export async function readWaveform(declaration: WaveformDeclaration, openFile: OpenFile, readHdf5: ReadHdf5 | null = null): Promise<Result<ReadWaveform, Problem[]>> {
+  if (declaration.arrays) return readArrayWaveform(declaration, declaration.arrays, openFile, readHdf5);
   const read: Result<ModeTable, Problem[]>[] = [];
   for (const { file, mode } of declaration.files) {
     const table = await readTable(file, declaration.columns, openFile);
@@ -36,6 +41,19 @@ export async function readWaveform(declaration: WaveformDeclaration, openFile: O
   }
   const tables = collect(read);
   return tables.ok ? assembleWaveform(declaration, tables.value) : tables;
+}
+
+/** The same from array files, whose columns are known once their shapes are. */
+async function readArrayWaveform(declaration: WaveformDeclaration, layout: ArrayLayout, openFile: OpenFile, readHdf5: ReadHdf5 | null): Promise<Result<ReadWaveform, Problem[]>> {
+  const wish = { layout, declared: declaration.columns, leastL: declaration.variable === 'phi2' ? 1 : 2 };
+  const read = [];
+  for (const { file, mode } of declaration.files) {
+    const arrays = await readArrays(file, wish, openFile, readHdf5);
+    read.push(arrays.ok ? ok({ ...arrays.value, tables: arrays.value.tables.map((one) => ({ ...one, mode: one.mode ?? mode })) }) : arrays);
+  }
+  const files = collect(read);
+  if (!files.ok) return files;
+  return assembleWaveform({ ...declaration, columns: files.value[0]!.columns }, files.value.flatMap(({ tables }) => tables));
 }
 
 /** The synchronous half, for a browser that has parsed the bytes itself. */
@@ -49,9 +67,9 @@ export function assembleWaveform(declaration: WaveformDeclaration, tables: reado
   const apart = tables.flatMap(({ table }) => axesApart(first, axis, table, table.columns[axisAt]!));
   if (apart.length > 0) return err(apart);
   if (declaration.domain === 'frequency' && !(axis[0]! > 0))
-    return err([{ code: 'formats/frequency-not-positive', where: `${first.file}:${first.lineOfRow(0)}`, saw: `f = ${axis[0]} ${unit}`, expected: 'frequencies above zero', hint: 'Leave out zero and negative frequencies.' }]);
+    return err([{ code: 'formats/frequency-not-positive', where: whereRow(first, 0), saw: `f = ${axis[0]} ${unit}`, expected: 'frequencies above zero', hint: 'Leave out zero and negative frequencies.' }]);
   const waveform = waveformOf(declaration, tables, axis);
-  const gaps = declaration.domain === 'time' && waveform.uniformStep === null ? gapFindings(first.file, first.lineOfRow, axis, unit, traceOf(waveform.content)) : [];
+  const gaps = declaration.domain === 'time' && waveform.uniformStep === null ? gapFindings(first, axis, unit, traceOf(waveform.content)) : [];
   return ok({ waveform, findings: [...gaps, ...headerFindings(declaration, tables)] });
 }
 
@@ -82,7 +100,7 @@ function axesApart(first: NumberTable, axis: Float64Array, other: NumberTable, o
   if (axis.length !== otherAxis.length) return [{ code: 'formats/axes-differ', where: other.file, saw: `${otherAxis.length} rows against ${axis.length}`, expected }];
   const tolerance = (1e-6 * (axis[axis.length - 1]! - axis[0]!)) / (axis.length - 1);
   const at = axis.findIndex((t, i) => !(Math.abs(t - otherAxis[i]!) <= tolerance));
-  return at < 0 ? [] : [{ code: 'formats/axes-differ', where: `${other.file}:${other.lineOfRow(at)}`, saw: `${otherAxis[at]} against ${axis[at]}`, expected }];
+  return at < 0 ? [] : [{ code: 'formats/axes-differ', where: whereRow(other, at), saw: `${otherAxis[at]} against ${axis[at]}`, expected }];
 }
 
 function traceOf(content: ModeSet | LineOfSight): WaveTrace {

@@ -54,7 +54,7 @@ export async function preview(source: Source, { onProgress, digest, catalogue = 
   const { claims, waveforms, noise } = sheet.value;
   const files = waveforms.size + noise.size;
   let read = 0;
-  const inputs = await readInputs(sheet.value, new HashedFiles(source.openFile, digest), (doing) => onProgress((readingShare * read++) / Math.max(1, files), doing));
+  const inputs = await readInputs(sheet.value, new HashedFiles(source.openFile, digest), (doing) => onProgress((readingShare * read++) / Math.max(1, files), doing), source.readHdf5);
   if (!inputs.ok) return inputs;
   const share = (1 - readingShare) / Math.max(1, claims.length);
   const looked = claims.map((claim, i) => {

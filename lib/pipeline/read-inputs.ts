@@ -6,6 +6,7 @@ import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
 import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
+import type { ReadHdf5 } from '@/lib/formats/hdf5/hdf5-ask';
 import { readNoise } from '@/lib/formats/read-noise';
 import { readWaveform } from '@/lib/formats/read-waveform';
 import type { Problem } from '@/lib/kernel/problem';
@@ -28,14 +29,14 @@ export interface Inputs {
 const mostNumbers = 2 ** 26;
 
 /** Every file of the sheet, one after another so that memory holds one table at a time while it grows. */
-export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: (doing: string) => void): Promise<Result<Inputs, Problem[]>> {
+export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: (doing: string) => void, readHdf5: ReadHdf5 | null = null): Promise<Result<Inputs, Problem[]>> {
   const problems: Problem[] = [];
   const waveforms = new Map<string, Found<Waveform>>();
   const noise = new Map<string, Found<NoiseCurve>>();
   let numbers = 0;
   for (const declaration of sheet.waveforms.values()) {
     onFile(`reading ${declaration.name}`);
-    const read = await readWaveform(declaration, files.open);
+    const read = await readWaveform(declaration, files.open, readHdf5);
     if (read.ok) numbers += numbersIn(read.value.waveform);
     if (numbers > mostNumbers) return err([...problems, tooLarge]);
     if (read.ok) waveforms.set(declaration.name, { input: read.value.waveform, findings: [...sheetFindings(declaration), ...read.value.findings] });
@@ -50,7 +51,7 @@ export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: 
   return problems.length > 0 ? err(once(problems)) : ok({ waveforms, noise, files });
 }
 
-const tooLarge: Problem = { code: 'formats/sheet-too-large', where: '/waveforms', saw: `more than ${mostNumbers} numbers in all waveforms together`, expected: `at most ${mostNumbers}`, hint: 'Thin the samples, or make several sheets.' };
+const tooLarge: Problem = { code: 'formats/sheet-too-large', where: '/waveforms', saw: `more than ${mostNumbers} numbers in all waveforms together`, expected: `at most ${mostNumbers}`, hint: 'Thin the records, cut them before the parts that the claims use, or make several sheets.' };
 
 function numbersIn(waveform: Waveform | null): number {
   if (waveform === null) return 0;

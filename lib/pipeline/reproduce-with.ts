@@ -4,6 +4,7 @@ import { parseClaimSheet } from '@/lib/claims/parse-sheet';
 import type { Figure } from '@/lib/engine/contract/measurement';
 import { Cancelled } from '@/lib/engine/contract/quantity';
 import { ENGINE_VERSION } from '@/lib/engine/version';
+import type { ReadHdf5 } from '@/lib/formats/hdf5/hdf5-ask';
 import type { OpenFile } from '@/lib/formats/open-file';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
@@ -21,6 +22,8 @@ export interface Source {
   /** Bytes of `claim.json`, or its JSON already parsed. */
   readonly sheetJson: Uint8Array | unknown;
   readonly openFile: OpenFile;
+  /** Reads HDF5 in a thread of its own; without it such files are refused. */
+  readonly readHdf5?: ReadHdf5;
 }
 
 export interface ReproduceOptions {
@@ -44,7 +47,7 @@ export async function reproduceWith(catalogue: Catalogue, source: Source, option
   if (!sheet.ok) return sheet;
   try {
     const files = new HashedFiles(source.openFile, options.digest);
-    const inputs = await readInputs(sheet.value, files, fileProgress(sheet.value, options));
+    const inputs = await readInputs(sheet.value, files, fileProgress(sheet.value, options), source.readHdf5);
     return inputs.ok ? ok(measureAll(sheet.value, inputs.value, options)) : inputs;
   } catch (thrown) {
     if (thrown instanceof Cancelled) return err([{ code: 'pipeline/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' }]);

@@ -1,4 +1,5 @@
 import type { BinaryFacts, Variable, Waveform } from './waveform';
+import type { ArrayLayout } from './array-layout';
 import type { ModeIndex } from './settings';
 
 /**
@@ -28,6 +29,8 @@ export interface WaveformDeclaration {
   readonly name: string;
   readonly files: readonly SourceFile[];
   readonly columns: readonly Column[];
+  /** For files of arrays; null for text. `columns` then says what stands in an N×K array. */
+  readonly arrays: ArrayLayout | null;
   readonly domain: 'time' | 'frequency';
   readonly variable: Variable;
   readonly timeUnit: 'M' | 's' | '1/M' | 'Hz';
@@ -51,5 +54,5 @@ export interface WaveformDeclaration {
 export type RunFacts = Pick<Waveform, 'series' | 'resolution' | 'extractionRadiusM' | 'radiusType' | 'timeLabel' | 'tetrad'>;
 
 export type NoiseDeclaration =
-  | { readonly kind: 'table'; readonly name: string; readonly file: string; readonly columns: readonly Column[]; readonly sided: 'one' | 'two' }
+  | { readonly kind: 'table'; readonly name: string; readonly file: string; readonly format: 'text' | 'npy'; readonly columns: readonly Column[]; readonly sided: 'one' | 'two' }
   | { readonly kind: 'built-in'; readonly name: string; readonly curve: string };

@@ -62,7 +62,7 @@ export class TableParser {
   push(chunk: Uint8Array): boolean {
     if (this.stopped || chunk.length === 0) return !this.stopped;
     this.bytes += chunk.length;
-    if (this.bytes > this.limits.bytes) return this.stop('formats/file-too-large', `more than ${this.limits.bytes / 2 ** 20} MiB`, `at most ${this.limits.bytes / 2 ** 20} MiB of text`, 'Thin the samples.');
+    if (this.bytes > this.limits.bytes) return this.stop('formats/file-too-large', `more than ${this.limits.bytes / 2 ** 20} MiB`, `at most ${this.limits.bytes / 2 ** 20} MiB of text`, 'Thin the record, cut it before the part that the claims use, or give one file a mode.');
     const data = this.started ? chunk : this.start(chunk);
     const end = data.lastIndexOf(newline) + 1;
     if (end === 0) return this.keep(data);
@@ -205,7 +205,7 @@ export class TableParser {
   private grow(): boolean {
     const most = Math.min(this.limits.rows, Math.floor(this.limits.cells / this.kept));
     if (this.rows >= most)
-      return this.stop('formats/too-many-rows', `more than ${most} rows`, `at most ${most} rows of ${this.kept} column${this.kept === 1 ? '' : 's'}`, 'Thin the samples, or give one file a mode.', this.line);
+      return this.stop('formats/too-many-rows', `more than ${most} rows`, `at most ${most} rows of ${this.kept} column${this.kept === 1 ? '' : 's'}`, 'Thin the record to the steps that its highest frequency needs, cut it before the part that the claims use, or give one file a mode.', this.line);
     this.capacity = Math.min(most, this.capacity * 2);
     for (let k = 0; k < this.columns.length; k++) {
       const old = this.columns[k];

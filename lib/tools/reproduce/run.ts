@@ -3,6 +3,7 @@ import { formatProblem, type Problem } from '@/lib/kernel/problem';
 import { formatProblems, formatResult } from '@/lib/pipeline/format-result';
 import type { StreamingDigest } from '@/lib/pipeline/hashed-files';
 import { reproduce } from '@/lib/pipeline/reproduce';
+import { readHdf5 } from '@/lib/threads/read-hdf5';
 import { openSource } from './open-source';
 import { printResult } from './print-result';
 
@@ -32,7 +33,7 @@ export async function runReproduce(args: readonly string[], screen: Screen): Pro
   try {
     const { sheetJson, openFile } = source.value;
     const progress = progressOn(screen);
-    const run = await reproduce({ sheetJson, openFile }, { withFigures: false, onProgress: progress.step, cancelled: () => false, digest: sha256 });
+    const run = await reproduce({ sheetJson, openFile, readHdf5 }, { withFigures: false, onProgress: progress.step, cancelled: () => false, digest: sha256 });
     progress.end();
     if (!run.ok) return refuse(run.error, wishes.json, screen);
     screen.out(wishes.json ? formatResult(run.value.result) : printResult(run.value.result));

@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto';
 import { createReadStream } from 'node:fs';
 import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
 import { reproduce } from '@/lib/pipeline/reproduce';
+import { readHdf5 } from '@/lib/threads/read-hdf5';
 import type { ProgressNote, SheetTask } from './sheet-task';
 
 /**
@@ -13,7 +14,7 @@ export default async function sheetThread({ sheet, files, withFigures, port }: S
   const note = (fraction: number, doing: string): void => port.postMessage({ fraction, doing } satisfies ProgressNote);
   try {
     return await reproduce(
-      { sheetJson: sheet, openFile: openAmong(files) },
+      { sheetJson: sheet, openFile: openAmong(files), readHdf5 },
       { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256 },
     );
   } finally {

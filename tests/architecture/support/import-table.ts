@@ -27,12 +27,14 @@ export const TABLE: Readonly<Record<string, Rule>> = {
   jobs: { values: ['kernel', 'env'], types: ['db'], packages: ['*'] },
   storage: { values: ['kernel', 'env'], packages: ['*'] },
   mail: { values: ['kernel', 'env'], packages: ['*'] },
-  services: { values: ['kernel', 'env', 'db', 'jobs', 'storage', 'mail', ...DOMAIN], packages: ['*'] },
+  // A file of strangers is read in a thread of its own, which formats cannot start: it has no platform.
+  threads: { values: ['kernel', 'formats'], packages: ['node', 'tsx'] },
+  services: { values: ['kernel', 'env', 'db', 'jobs', 'storage', 'mail', 'threads', ...DOMAIN], packages: ['*'] },
   http: { values: ['kernel', 'env', 'auth', 'services', 'policy', 'db'], packages: ['*'] },
-  worker: { values: ['kernel', 'env', 'db', 'services', 'jobs', 'storage', 'mail', ...DOMAIN], packages: ['*'] },
+  worker: { values: ['kernel', 'env', 'db', 'services', 'jobs', 'storage', 'mail', 'threads', ...DOMAIN], packages: ['*'] },
   signer: { values: ['kernel', 'env', 'db', 'storage', 'badges', 'services'], types: DOMAIN, packages: ['*'] },
   tools: {
-    values: ['kernel', 'env', 'db', 'auth', 'jobs', 'storage', 'mail', 'services', 'http', 'worker', 'signer', ...DOMAIN],
+    values: ['kernel', 'env', 'db', 'auth', 'jobs', 'storage', 'mail', 'services', 'http', 'worker', 'signer', 'threads', ...DOMAIN],
     packages: ['*'],
   },
   ui: { values: ['kernel'], types: [...DOMAIN, 'services'], packages: ['*'] },

@@ -127,7 +127,7 @@ describe('a bad sheet is refused with every problem, its place, what was seen an
     ['seconds with rh/M', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], timeUnit: 's' }), '/waveforms/X/amplitudeUnit'],
     ['hertz in the time domain', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], timeUnit: 'Hz' }), '/waveforms/X/timeUnit: saw "Hz"; expected "M" or "s" for domain "time".'],
     ['a ψ₄ factor for strain', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], psi4Factor: 2 }), '/waveforms/X/psi4Factor: saw 2; expected it only beside variable "psi4".'],
-    ['another file format', withWaveform({ file: 'x.h5', columns: ['t', 're', 'im'] }), '/waveforms/X/file: saw a file in the format hdf5; expected text. This version reads text columns'],
+    ['an HDF5 file without datasets', withWaveform({ file: 'x.h5', columns: ['t', 're', 'im'] }), '/waveforms/X/datasets: saw nothing; expected the datasets of the file, such as {"2,2": "/l2_m2"}'],
     ['a variable that the quantity has no meaning for', { ...withWaveform({ file: 'x.txt', variable: 'phi2', columns: ['t', 're11', 'im11'] }), claims: [match({ of: { a: 'A', b: 'X' } })] }, '/claims/0/of/b: saw "X", which holds phi2; expected strain, news, psi4 as "b" of match.'],
     ['a gravitational unit for φ₂', withWaveform({ file: 'x.txt', variable: 'phi2', columns: ['t', 're', 'im'], amplitudeUnit: 'rh/M' }), '/waveforms/X/amplitudeUnit: saw "rh/M"; expected "geometric" or "perField" for φ₂.'],
     ['a luminosity with another column', withWaveform({ file: 'x.txt', variable: 'luminosity', columns: ['t', 'L', 're'] }), '"t" and "L" once each, the luminosity in erg/s'],

@@ -113,7 +113,7 @@ describe('a text table is refused with file, line, what was seen and what to do'
     const small = { bytes: 100, rows: 4096, cells: 9000, lineBytes: 50 };
     expect(refusals('0 1 2\n'.repeat(50), undefined, small)[0]).toContain('expected at most');
     expect(refusals('1'.repeat(60), undefined, { ...small, bytes: 1000 })[0]).toContain('a.txt:1: saw a line of more than 50 bytes');
-    expect(refusals('0 1 2\n'.repeat(5000), undefined, { ...small, bytes: 1e6 })[0]).toContain('a.txt:3001: saw more than 3000 rows; expected at most 3000 rows of 3 columns. Thin the samples');
+    expect(refusals('0 1 2\n'.repeat(5000), undefined, { ...small, bytes: 1e6 })[0]).toContain('a.txt:3001: saw more than 3000 rows; expected at most 3000 rows of 3 columns. Thin the record');
   });
 
   it('and the sentence stays short and printable whatever the bytes', () => {

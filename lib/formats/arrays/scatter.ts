@@ -1,0 +1,106 @@
+import { readerOf, type ElementType } from './element-type';
+
+/**
+ * Puts the elements of an array, as they come from a file, where its series want them. `strides` says
+ * how far apart in `out` neighbours along each dimension lie; the walk is in the file's own order.
+ */
+export interface Walk {
+  readonly shape: readonly number[];
+  readonly strides: readonly number[];
+  readonly fortran: boolean;
+  readonly base: number;
+  /** From a real part to its imaginary part in `out`. */
+  readonly toImaginary: number;
+}
+
+export class Scatter {
+  private readonly shape: readonly number[];
+  private readonly strides: readonly number[];
+  private readonly index: number[];
+  private at: number;
+  readonly total: number;
+  done = 0;
+
+  constructor(
+    private readonly walk: Walk,
+    private readonly type: ElementType,
+    private readonly out: Float64Array,
+  ) {
+    // Slowest first, as C writes them; Fortran's order is the same turned round.
+    this.shape = walk.fortran ? [...walk.shape].reverse() : walk.shape;
+    this.strides = walk.fortran ? [...walk.strides].reverse() : walk.strides;
+    this.index = this.shape.map(() => 0);
+    this.at = walk.base;
+    this.total = this.shape.reduce((n, d) => n * d, 1);
+  }
+
+  /** Whole elements only. */
+  push(bytes: Uint8Array): void {
+    const count = Math.min(this.total - this.done, Math.floor(bytes.length / this.type.size));
+    let from = 0;
+    while (from < count) {
+      const run = this.run(count - from);
+      this.copy(bytes, from, run);
+      from += run;
+      this.advance(run);
+    }
+    this.done += count;
+  }
+
+  private get last(): number {
+    return this.shape.length - 1;
+  }
+
+  private run(most: number): number {
+    return this.last < 0 ? 1 : Math.min(most, this.shape[this.last]! - this.index[this.last]!);
+  }
+
+  private copy(bytes: Uint8Array, from: number, run: number): void {
+    const { type, out, walk } = this;
+    const stride = this.last < 0 ? 0 : this.strides[this.last]!;
+    if (this.copyDoubles(bytes, from, run, stride)) return;
+    const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+    const read = readerOf(type);
+    let to = this.at;
+    let at = from * type.size;
+    for (let i = 0; i < run; i++, to += stride, at += type.size) {
+      out[to] = read(view, at + type.firstAt);
+      if (type.secondAt !== null) out[to + walk.toImaginary] = read(view, at + type.secondAt);
+    }
+  }
+
+  /** The usual case without a call for each number: doubles of this machine's order on their boundaries. */
+  private copyDoubles(bytes: Uint8Array, from: number, run: number, stride: number): boolean {
+    const { base, littleEndian, size, firstAt, secondAt } = this.type;
+    if (base !== 'f8' || !littleEndian || !hostIsLittle || (size | firstAt | (secondAt ?? 0) | bytes.byteOffset) % 8 !== 0) return false;
+    const numbers = new Float64Array(bytes.buffer, bytes.byteOffset, bytes.byteLength >> 3);
+    const { out } = this;
+    const step = size >> 3;
+    let at = (from * size + firstAt) >> 3;
+    let to = this.at;
+    if (secondAt === null) for (let i = 0; i < run; i++, at += step, to += stride) out[to] = numbers[at]!;
+    else {
+      const second = (secondAt - firstAt) >> 3;
+      const imaginary = this.walk.toImaginary;
+      for (let i = 0; i < run; i++, at += step, to += stride) {
+        out[to] = numbers[at]!;
+        out[to + imaginary] = numbers[at + second]!;
+      }
+    }
+    return true;
+  }
+
+  private advance(run: number): void {
+    let d = this.last;
+    if (d < 0) return;
+    this.index[d]! += run;
+    this.at += run * this.strides[d]!;
+    while (d > 0 && this.index[d] === this.shape[d]) {
+      this.at += this.strides[d - 1]! - this.index[d]! * this.strides[d]!;
+      this.index[d] = 0;
+      this.index[--d]! += 1;
+    }
+  }
+}
+
+const hostIsLittle = new Uint8Array(Uint16Array.of(1).buffer)[0] === 1;

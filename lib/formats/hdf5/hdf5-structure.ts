@@ -1,0 +1,82 @@
+import { formatProblem } from '@/lib/kernel/problem';
+import { structureLimits, type ArrayStructure, type StructureEntry } from '../arrays/structure';
+import { attributesOf } from './attributes';
+import { readableDataset } from './dataset';
+import { faultOf } from './hdf5-faults';
+import type { OneFile } from './one-file';
+import { typeWords } from './stored-type';
+
+/** Groups and datasets in the file's own order. A group met twice is listed once, so that a circle ends. */
+export function hdf5Structure(one: OneFile): ArrayStructure {
+  const walk: Walk = { one, entries: [], seen: new Set(), cut: false };
+  visit(walk, '/', 0);
+  return { format: 'hdf5', entries: walk.entries, cut: walk.cut };
+}
+
+interface Walk {
+  readonly one: OneFile;
+  readonly entries: StructureEntry[];
+  readonly seen: Set<string>;
+  cut: boolean;
+}
+
+function visit(walk: Walk, group: string, depth: number): void {
+  const { h5, id } = walk.one;
+  const identity = String(h5.create_object_reference(id, group));
+  if (walk.seen.has(identity)) return;
+  walk.seen.add(identity);
+  for (const name of h5.get_names(id, group, false)) {
+    if (walk.entries.length >= structureLimits.entries || depth >= structureLimits.depth) {
+      walk.cut = true;
+      return;
+    }
+    const path = `${group === '/' ? '' : group}/${name}`;
+    const isGroup = list(walk, path);
+    if (isGroup) visit(walk, path, depth + 1);
+  }
+}
+
+function list(walk: Walk, path: string): boolean {
+  const { one, entries } = walk;
+  const { h5, id } = one;
+  const before = one.reachedFor.length;
+  const nothing = { shape: null, complex: false, type: '', attributes: [], refusal: null };
+  try {
+    const type = h5.get_type(id, path);
+    if (type === h5.H5G_GROUP) {
+      entries.push({ ...nothing, path, kind: 'group', attributes: shownAttributes(one, path) });
+      return true;
+    }
+    if (type === h5.H5G_DATASET) entries.push(datasetEntry(one, path));
+    if (type === h5.H5G_UDLINK) throw new Error('a link to another file');
+  } catch (thrown) {
+    const outside = one.reachedFor.length > before || isExternal(one, path);
+    entries.push({ ...nothing, path, kind: 'dataset', refusal: formatProblem(faultOf(thrown, '', outside ? [path] : [])) });
+  }
+  return false;
+}
+
+function isExternal({ h5, id }: OneFile, path: string): boolean {
+  try {
+    return Boolean(h5.get_external_link(id, path).filename);
+  } catch {
+    return false;
+  }
+}
+
+function datasetEntry(one: OneFile, path: string): StructureEntry {
+  const meta = one.h5.get_dataset_metadata(one.id, path);
+  const readable = readableDataset(one, '', { path, indices: null, field: null });
+  const records = !readable.ok && meta.compound_type !== undefined;
+  return {
+    path, kind: 'dataset', shape: meta.shape, type: typeWords(meta), attributes: shownAttributes(one, path),
+    complex: readable.ok && readable.value.type.secondAt !== null,
+    refusal: readable.ok || records ? null : readable.error.map(formatProblem).join(' '),
+  };
+}
+
+const shownAttributes = (one: OneFile, path: string): StructureEntry['attributes'] =>
+  attributesOf(one, path).map(({ name, shape, values }) => ({
+    name: name.slice(0, structureLimits.valueLength),
+    value: values === null ? `not shown${shape && shape.length > 0 ? ` (${shape.join('×')})` : ''}` : values.slice(0, 32).join(', ').slice(0, structureLimits.valueLength) + (values.length > 32 ? ', …' : ''),
+  }));

@@ -1,0 +1,39 @@
+import { closeSync, fstatSync, openSync, readSync } from 'node:fs';
+import { parentPort, workerData } from 'node:worker_threads';
+import { readSeries, type Series } from '@/lib/formats/arrays/series';
+import { hdf5Source } from '@/lib/formats/hdf5/hdf5-source';
+import { hdf5Structure } from '@/lib/formats/hdf5/hdf5-structure';
+import { faultOf } from '@/lib/formats/hdf5/hdf5-faults';
+import { capMemory, openOneFile, type RandomAccess } from '@/lib/formats/hdf5/one-file';
+import { err, ok } from '@/lib/kernel/result';
+import type { Hdf5Answer, Hdf5Task } from './hdf5-task';
+
+/** Runs inside a thread that lives for one file and one question. */
+export async function answer(): Promise<void> {
+  const task = workerData as Hdf5Task;
+  const descriptor = openSync(task.path, 'r');
+  try {
+    const found = await inspect(task, accessTo(descriptor));
+    parentPort?.postMessage(found, found.ok && 'tables' in found.value ? buffersOf(found.value) : []);
+  } finally {
+    closeSync(descriptor);
+  }
+}
+
+async function inspect({ file, ask, memoryBytes }: Hdf5Task, bytes: RandomAccess): Promise<Hdf5Answer> {
+  capMemory(memoryBytes);
+  try {
+    const one = await openOneFile(bytes);
+    return ask.kind === 'series' ? await readSeries(ask.wish, hdf5Source(file, one)) : ok(hdf5Structure(one));
+  } catch (thrown) {
+    return err([faultOf(thrown, file, [])]);
+  }
+}
+
+function accessTo(descriptor: number): RandomAccess {
+  const { size } = fstatSync(descriptor);
+  return { size, read: (into, at) => readSync(descriptor, into, 0, into.length, at) };
+}
+
+/** Columns of one dataset share a buffer, and modes may share their times. */
+const buffersOf = ({ tables }: Series): ArrayBuffer[] => [...new Set(tables.flatMap(({ columns }) => columns.map(({ buffer }) => buffer as ArrayBuffer)))];

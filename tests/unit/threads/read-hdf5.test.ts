@@ -1,0 +1,103 @@
+import { existsSync, readdirSync, readFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { describe, expect, it } from 'vitest';
+import { hdf5Limits, readHdf5, readHdf5Structure, readHdf5Within } from '@/lib/threads/read-hdf5';
+import { formatProblem } from '@/lib/kernel/problem';
+import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
+import { fixture, fixturePath, inPieces, open } from '../formats/array-waves';
+
+const hostile = inPieces({ 'h.h5': fixture('hostile.h5') });
+
+describe('a hostile HDF5 file never hurts its reader', () => {
+  it('every way out of the file is refused by name, and so is what is too large', async () => {
+    const parts: readonly (readonly [string, string])[] = [
+      ['/virtual', 'saw a virtual dataset, which takes its numbers from elsewhere'],
+      ['/elsewhere/x', 'saw a link to another file, or numbers stored in one'],
+      ['/elsewhere-data', 'saw a link to another file, or numbers stored in one'],
+      ['/stored-outside', 'saw a link to another file, or numbers stored in one'],
+      ['/stored-in-dice', 'saw a link to another file, or numbers stored in one'],
+      ['/stored-in-itself', 'saw a link to another file, or numbers stored in one'],
+      ['/round', 'saw links that lead in a circle'],
+      ['/dangling', 'saw a link that leads nowhere'],
+      ['/endless', 'saw 1099511627776 samples; expected at most 2097152 samples a mode. Thin the record'],
+      ['/long', 'saw 2097153 samples'],
+      ['/great-chunk', 'saw chunks of 3221225472 bytes'],
+      ['/unknown-filter', 'saw numbers packed by a filter that is not read here (lzf, id 32000)'],
+    ];
+    const datasets = Object.fromEntries(parts.map(([path], i) => [`40,${i}`, path]));
+    const { problems } = await open({ file: 'h.h5', datasets }, hostile, readHdf5);
+    expect(problems).toHaveLength(parts.length);
+    parts.forEach(([path, words], i) => expect(problems[i], path).toContain(words));
+    expect(problems.join()).not.toMatch(/passwd|hostname|__w|libhdf5/);
+  });
+
+  it('circles and depths end, and what leads out is listed with its reason', async () => {
+    const found = await readHdf5Structure('h.h5', hostile('h.h5'));
+    if (!found.ok) throw new Error(found.error.map(formatProblem).join());
+    const { entries, cut } = found.value;
+    expect([cut, entries.filter(({ path }) => path.startsWith('/cycle')).map(({ path }) => path)]).toEqual([true, ['/cycle', '/cycle/self']]);
+    expect(entries.filter(({ path, refusal }) => /^\/(virtual|elsewhere|elsewhere-data|dangling|round|about)$/.test(path) && refusal === null)).toEqual([]);
+  });
+
+  it('a packed bomb ends at the memory that its thread may have', async () => {
+    const narrow = readHdf5Within({ ...hdf5Limits, memoryBytes: 64 * 2 ** 20 });
+    const { problems } = await open({ file: 'b.h5', datasets: { '2,2': '/bomb' } }, inPieces({ 'b.h5': fixture('bomb.h5') }), narrow);
+    expect(problems).toEqual([expect.stringMatching(/^b\.h5:\/bomb: saw (a file that needs more memory|a part of the file that cannot be read)/)]);
+  });
+
+  it('a reader that takes too long is ended, and leaves nothing behind', async () => {
+    const mine = () => readdirSync(tmpdir()).filter((name) => name.startsWith(`counterfoil-run-${process.pid}-`));
+    const before = mine();
+    const { problems } = await open({ file: 'h.h5', datasets: { '2,2': '/t' } }, hostile, readHdf5Within({ ...hdf5Limits, timeMs: 5 }));
+    expect(problems).toEqual([expect.stringContaining('saw a file that took longer than 0.005 s to read')]);
+    expect(mine()).toEqual(before);
+  });
+
+  const whole = fixture('layouts.h5');
+  it.each<[string, Uint8Array, string]>([
+    ['cut short', whole.subarray(0, 30_000), 'ends before its own stated end'],
+    ['overwritten in its middle', Uint8Array.from(whole, (b, i) => (i > 200 && i < 45_000 ? (b * 31 + i) & 255 : b)), 'expected a whole HDF5 file'],
+  ])('a file %s is refused', async (_what, bytes, words) => {
+    const { problems } = await open({ file: 'x.h5', datasets: { '2,2': '/R0100/l2_m2' } }, inPieces({ 'x.h5': bytes }), readHdf5);
+    expect(problems).toEqual([expect.stringContaining(words)]);
+  });
+});
+
+describe('a sheet with an HDF5 file', () => {
+  it('is read in the worker’s thread, and hashed as it is read', async () => {
+    const threads = openSheetThreads({ ...houseLimits, threads: 1 });
+    const sheet = { format: 'counterfoil-claim/1', waveforms: { A: { file: 'l.h5', datasets: { '2,2': '/R0100/l2_m2' }, negativeM: 'mirror' } }, claims: [{ id: 'E', quantity: 'radiated-energy', of: { a: 'A' }, claimed: '0' }] };
+    const run = await threads.run({ sheet, files: [{ name: 'l.h5', path: fixturePath('layouts.h5') }], withFigures: false }, { onProgress: () => undefined, signal: new AbortController().signal });
+    await threads.close();
+    if (!run.ok) throw new Error(run.error.map(formatProblem).join('\n'));
+    expect(run.value.result.files).toEqual([{ name: 'l.h5', bytes: fixture('layouts.h5').length, sha256: expect.stringMatching(/^[0-9a-f]{64}$/) }]);
+    expect(run.value.result.claims[0]?.points[0]?.value).toBeGreaterThan(0);
+  });
+});
+
+const event = join(process.cwd(), '..', 'shared', 'reference', 'data', 'detector');
+describe.skipIf(!existsSync(event))('the open data of the first event (skipped where the reference data is not)', () => {
+  const files = (name: string) => inPieces({ [name]: new Uint8Array(readFileSync(join(event, name))) });
+
+  it('the template is read by its rows, and is what the text of it says', async () => {
+    const name = 'GW150914_4_template.hdf5';
+    const { waveform, problems } = await open({ file: name, datasets: { plus: '/template[0,:]', cross: '/template[1,:]' }, time: { start: -16, step: 1 / 4096 }, timeUnit: 's', amplitudeUnit: 'strain', totalMassMsun: 70.98, distanceMpc: 1 }, files(name), readHdf5);
+    if (waveform?.content.kind !== 'line-of-sight') throw new Error(problems.join());
+    const { plus, cross } = waveform.content;
+    expect([plus.length, waveform.uniformStep, waveform.significantDigits]).toEqual([131072, 1 / 4096, 7]);
+    const rows = readFileSync(join(event, '..', '..', 'sheets', 'event', 'template.txt'), 'utf8').split('\n').filter((line) => line.trim() !== '' && !line.startsWith('#')).map((line) => line.trim().split(/\s+/).map(Number));
+    const peak = plus.reduce((most, x) => Math.max(most, Math.abs(x)), 0);
+    const textPeak = rows.reduce((most, row) => Math.max(most, Math.abs(row[1]!)), 0);
+    expect(textPeak / peak).toBeCloseTo(1, 5);
+    expect(cross?.length).toBe(131072);
+  });
+
+  it('a detector’s strain, packed, with the even steps that its attributes name', async () => {
+    const name = 'H-H1_LOSC_4_V2-1126259446-32.hdf5';
+    const found = await readHdf5Structure(name, files(name)(name));
+    expect(found.ok && found.value.entries.find(({ path }) => path === '/strain/Strain')).toMatchObject({ shape: [131072], attributes: expect.arrayContaining([{ name: 'Xspacing', value: '0.000244140625' }]) });
+    const { waveform } = await open({ file: name, datasets: { plus: '/strain/Strain' }, time: { start: 0, step: 0.000244140625 }, timeUnit: 's', amplitudeUnit: 'strain' }, files(name), readHdf5);
+    expect(waveform?.axis.length).toBe(131072);
+  });
+});
