@@ -53,6 +53,11 @@ export const furtherRows: readonly CatalogueRow[] = [
     advice: 'Say in the statement that the fit is extrapolated.',
   },
   {
+    code: 'engine/few-orbits', numbers: [], part: 'sampling', levels: look, concerns: 'eccentricity',
+    rule: 'The window holds fewer than three orbits: the smooth fit follows the oscillation itself.',
+    advice: 'Declare a longer window.',
+  },
+  {
     code: 'engine/ringdown-against-balance', numbers: [], part: 'facts', levels: look, concerns: 'remnant mass and spin',
     rule: 'The remnant by balance and the one by its ringing are further apart than both allow.',
     advice: 'Check the start values, the modes and the window of the ringdown.',

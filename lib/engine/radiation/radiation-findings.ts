@@ -9,7 +9,14 @@ import { startBurst } from './start-burst';
 
 const figures = (x: number, digits = 3): string => Number(x.toPrecision(digits)).toString();
 
-/** V14: partners with m < 0 were made up; `without` says what the number would be else. */
+/**
+ * V14: partners with m < 0 were made up; `without` says what the number would be else.
+ * Shape:  a list of one finding, or empty.
+ * Units:  none.
+ * Error:  thresholds only.
+ * Fails:  never.
+ * Source: domain reference 4.3, V14.
+ */
 export function negativeModesFinding(completed: CompletedModes, name: string, without = ''): Finding[] {
   if (!completed.mirrorAssumed) return [];
   return [
@@ -23,7 +30,14 @@ export function negativeModesFinding(completed: CompletedModes, name: string, wi
   ];
 }
 
-/** V13 for a sum over modes: the quadrupole incomplete, or nothing above ℓ = 2 in the file. `higher` says what such modes would add. */
+/**
+ * V13 for a sum over modes: the quadrupole incomplete, or nothing above ℓ = 2 in the file. `higher` says what such modes would add.
+ * Shape:  a list, empty when there is nothing to say.
+ * Units:  none.
+ * Error:  thresholds only.
+ * Fails:  never.
+ * Source: domain reference 4.3, V13.
+ */
 export function missingModesFindings(completed: CompletedModes, missing: readonly (readonly [number, number])[], modesDeclared: boolean, noun: string, higher: string): Finding[] {
   const { waveform, negativeM } = completed;
   const { content, name } = waveform;
@@ -42,7 +56,14 @@ export function missingModesFindings(completed: CompletedModes, missing: readonl
   return [...listed, { ...base, text: `${name} holds modes of ℓ = 2 alone. ${higher}`, fix: 'Supply higher modes, or declare lMax: 2 to say that ℓ = 2 is meant.' }];
 }
 
-/** V09: start-up radiation inside the integral. */
+/**
+ * V09: start-up radiation inside the integral.
+ * Shape:  a list of one finding, or empty.
+ * Units:  startM in M.
+ * Error:  thresholds only.
+ * Fails:  never.
+ * Source: domain reference 4.3, V09.
+ */
 export function burstFindings(radiation: SampledRadiation, startM: number, waveform: Waveform, startDeclared: boolean): Finding[] {
   const burst = startBurst(radiation);
   if (burst === null || startM >= burst.arrivalM + 3 * burst.spreadM) return [];
@@ -61,7 +82,14 @@ export function burstFindings(radiation: SampledRadiation, startM: number, wavef
 const FEW = 12;
 const TOO_FEW = 4;
 
-/** V04: samples to a period of the fastest mode that matters. */
+/**
+ * V04: samples to a period of the fastest mode that matters.
+ * Shape:  a list of one finding, or empty.
+ * Units:  M.
+ * Error:  thresholds only.
+ * Fails:  never.
+ * Source: domain reference 4.3, V04.
+ */
 export function samplingFindings(record: RadiationRecord, energies: readonly ModeEnergy[], name: string): Finding[] {
   const found = coarsestSampling(record, energies);
   if (found === null || found.samplesPerPeriod >= FEW) return [];

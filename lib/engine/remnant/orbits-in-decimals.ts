@@ -45,6 +45,14 @@ function orbitWhere(fixed: Decimal, share: Decimal): Decimal {
   return w;
 }
 
+/**
+ * Mass and spin of Healy, Lousto & Zlochower, the orbit around the remnant solved for in √r.
+ * Shape:  two decimals.
+ * Units:  fraction of the total mass; dimensionless.
+ * Error:  some in the last of forty places.
+ * Fails:  never.
+ * Source: the same coefficients as route A.
+ */
 export function healyMassAndSpin(binary: DecimalBinary): { readonly mass: Decimal; readonly spin: Decimal } {
   const { eta, delta, spin } = binary;
   const sixth = power(delta, 6);

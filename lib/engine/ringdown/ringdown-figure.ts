@@ -20,7 +20,14 @@ function middles(tone: Tone, { from, to }: FitWindow): { readonly level: number;
   return { level, angle };
 }
 
-/** Amplitude around the window with the fitted decay, and what the fitted line leaves of the phase. */
+/**
+ * Amplitude around the window with the fitted decay, and what the fitted line leaves of the phase.
+ * Shape:  thinned to a screen's width.
+ * Units:  M from the peak; amplitudes in r·h/M, phase in rad.
+ * Error:  for eyes alone.
+ * Fails:  never.
+ * Source: Q18.
+ */
 export function ringdownFigure(tone: Tone, window: FitWindow, { omega, gamma }: RingdownLine, title: string): Figure {
   const { from, to, peakM } = window;
   const shown = stretchOf(tone, from - AROUND_M, to + AROUND_M, 0);

@@ -92,7 +92,14 @@ const houseMode: ModeIndex = [2, 2];
 /** Fewer samples, or less than half of the window inside the record, give no line. */
 const LEAST_SAMPLES = 8;
 
-/** The window from a peak at a time, or why there is none. */
+/**
+ * The window from a peak at a time, or why there is none.
+ * Shape:  one window.
+ * Units:  M.
+ * Error:  none.
+ * Fails:  with the finding that stops the claim: no peak, or less than half of the window inside the record.
+ * Source: settings.md section 5 (ringdown).
+ */
 export function fitWindow({ tones, settings, completed }: RingdownPoint, peakM: number | null): FitWindow | Finding {
   const { name } = completed.waveform;
   const { axis } = tones.B;
