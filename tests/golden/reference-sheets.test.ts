@@ -11,7 +11,7 @@ interface Expected {
   readonly points: readonly { readonly value: number; readonly tolerance: number; readonly kind: 'rel' | 'abs'; readonly source: string }[];
 }
 
-describe.each(['run1-chirps', 'run2-gaussians'])('the reference sheet %s', (name) => {
+describe.each(['run1-chirps', 'run2-gaussians', 'run4-order'])('the reference sheet %s', (name) => {
   const folder = join(sheets, name);
   const present = existsSync(join(folder, 'expected.json'));
   const expected = present

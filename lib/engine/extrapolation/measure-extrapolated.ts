@@ -7,7 +7,7 @@ import { orderOfValues, richardsonValue, type OfThree, type Spacings } from './r
 import type { Meter, RunScalar } from './run-scalar';
 import { chosenLines, otherRespectLine, propagatedLines, sensitivities } from './series-budget';
 import { approachFigure } from './series-figures';
-import { named, noOrder, short, waveformsOfRuns } from './series-findings';
+import { foundInRuns, named, noOrder, short, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
 import { areRuns, spacedRuns } from './spaced-runs';
 
@@ -58,7 +58,7 @@ export const measureExtrapolated =
     if (!isMeter(meter)) return stopped(meter);
     const read = readRuns(meter, runs, stepper(watch, runs.length));
     if (!areNumbers(read)) return stopped(read);
-    return carried({ request, leader, meter, observable, unit: unitOfObservable(observable), formalOrder, names: named(waveformsOfRuns(runs)), spacings: runs.map(({ place }) => place), read, spaced: [...findings, ...read.flatMap((run) => run.findings)] });
+    return carried({ request, leader, meter, observable, unit: unitOfObservable(observable), formalOrder, names: named(waveformsOfRuns(runs)), spacings: runs.map(({ place }) => place), read, spaced: [...findings, ...foundInRuns(read.map((run, i) => ({ name: runs[i]!.waveform.name, findings: run.findings })))] });
   };
 
 interface Carried {

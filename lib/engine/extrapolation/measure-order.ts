@@ -2,8 +2,6 @@ import type { Finding } from '../contract/finding';
 import type { BudgetLine, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
 import type { Observable } from '../contract/settings';
-import { toneSampling } from '../tones/tone-findings';
-import { recordFindings } from '../findings/record-findings';
 import { stop } from '../tones/measure-tones';
 import { floorRows, usedSettings } from '../tones/used-rows';
 import { curveNamed, curvesByRouteA, differencesOf, orderByRouteB, ordersOf, pointwiseOrders, slipOf, soundOrder, type Interval, type ThreeRuns } from './curve-orders';
@@ -15,10 +13,10 @@ import type { Curve } from './run-curves';
 import type { Run } from './runs';
 import { propagatedLines, sensitivities } from './series-budget';
 import { approachFigure, convergenceFigures } from './series-figures';
-import { mirroredFindings, named, noOrder, short, spreadFindings, waveformsOfRuns } from './series-findings';
+import { foundInRuns, named, noOrder, short, spreadFindings, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
 import { areRuns, spacedRuns, type SpacedRuns } from './spaced-runs';
-import type { RunScalar } from './run-scalar';
+import { runFindings, type RunScalar } from './run-scalar';
 
 const spacingsOf = (runs: readonly Run[]): Spacings => runs.map(({ place }) => place) as unknown as Spacings;
 const namesOf = (runs: readonly Run[]) => runs.map(({ waveform }) => waveform.name) as unknown as readonly [string, string, string];
@@ -41,12 +39,7 @@ function intervalOf(runs: readonly FollowedRun[], { settings: { window } }: Meas
 
 const isCurve = (observable: Observable): observable is 'dominant' | Curve => ['dominant', 'phase', 'amplitude', 'complex'].includes(observable);
 
-const curveFindings = (followed: Followed): Finding[] =>
-  followed.runs.flatMap((run) => [
-    ...mirroredFindings(run, followed.mode),
-    ...toneSampling({ ...run.tones.B, mode: followed.mode }, run.waveform.name),
-    ...recordFindings(run.waveform, (l, m) => followed.mode !== null && l === followed.mode[0] && m === followed.mode[1]),
-  ]);
+const curveFindings = (followed: Followed): Finding[] => foundInRuns(followed.runs.map((run) => ({ name: run.waveform.name, findings: runFindings(run, followed) })));
 
 /** Order of the next coarser three runs, by route A: null where they have none, undefined where there are not as many. */
 function orderBefore({ all }: SpacedRuns, request: MeasureRequest, curve: Curve): number | null | undefined {
@@ -134,7 +127,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
   if (!areNumbers(read)) return stopped(read);
   const spacings = spacingsOf(runs);
   const values = valuesA(read);
-  const seen = [...spaced.findings, ...read.flatMap(({ findings }) => findings)];
+  const seen = [...spaced.findings, ...foundInRuns(read.map(({ findings }, i) => ({ name: runs[i]!.waveform.name, findings })))];
   const found = orderOfValues(values, spacings);
   if (!found.ok) return stopped([because(runs, `The values ${values.map((x) => short(x, 8)).join(', ')} of ${observable}`, found.error), ...seen]);
   const order = found.value;

@@ -10,7 +10,7 @@ import type { Meter, RunScalar } from './run-scalar';
 import { isSamePlace, runsApart, type Run, type Runs } from './runs';
 import { chosenLines, otherRespectLine, propagatedLines } from './series-budget';
 import { approachFigure } from './series-figures';
-import { leftOutFindings, named, radiusFindings, short, timeLabelFindings, waveformsOfRuns } from './series-findings';
+import { foundInRuns, leftOutFindings, named, radiusFindings, short, timeLabelFindings, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
 
 const ROOT3 = Math.sqrt(3);
@@ -79,7 +79,7 @@ export const measureRadius =
     const step = stepper(watch, runs.length + 1);
     const read = readRuns(meter, runs, step);
     if (!areNumbers(read)) return stopped(read);
-    const findings = [...leftOutFindings(apart, where), ...radiusFindings(runs, degree, where), ...timeLabelFindings(runs, readsTimes(request.settings, observable), where), ...read.flatMap((run) => run.findings)];
+    const findings = [...leftOutFindings(apart, where), ...radiusFindings(runs, degree, where), ...timeLabelFindings(runs, readsTimes(request.settings, observable), where), ...foundInRuns(read.map((run, i) => ({ name: runs[i]!.waveform.name, findings: run.findings })))];
     return fitted({ request, observable, unit: unitOfObservable(observable), degree, runs, read, meter, step, findings });
   };
 

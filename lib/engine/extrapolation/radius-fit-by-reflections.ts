@@ -27,6 +27,7 @@ function reflect(rows: number[][], j: number): void {
  * Source: Q21; Golub & Van Loan, Matrix Computations, section 5.3 (from memory).
  */
 export function fitByReflections(radii: readonly number[], values: readonly number[], degree: number): number[] {
+  if (radii.length <= degree) return new Array<number>(degree + 1).fill(Number.NaN);
   const rows = rowsOf(radii, values, degree);
   for (let j = 0; j <= degree; j++) reflect(rows, j);
   const coefficients = new Array<number>(degree + 1).fill(Number.NaN);

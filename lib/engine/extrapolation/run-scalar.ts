@@ -88,7 +88,8 @@ function computationOf({ tones, peakTones, waveform }: FollowedRun, here: AtPeak
   ];
 }
 
-function runFindings(run: FollowedRun, { mode }: Followed): Finding[] {
+/** What one run shows in the mode that is followed. */
+export function runFindings(run: FollowedRun, { mode }: Followed): Finding[] {
   const { waveform, tones } = run;
   return [...mirroredFindings(run, mode), ...toneSampling({ ...tones.B, mode }, waveform.name), ...recordFindings(waveform, (l, m) => mode !== null && l === mode[0] && m === mode[1])];
 }

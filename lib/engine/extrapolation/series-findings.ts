@@ -74,3 +74,14 @@ export function spreadFindings(range: number | null, median: number | null, wher
   if (range === null || range <= 1) return [];
   return [{ code: 'engine/no-single-order', level: 'worth-a-look', where, text: `Taken at each time by itself, the order is ${median === null ? 'none in the median' : `${short(median, 3)} in the median`} and its quartiles lie ${short(range, 3)} apart: no single order describes the record.`, fix: 'Declare a window in which the differences do not change sign, or supply a finer run.' }];
 }
+
+/** What the runs show one by one, the leading run last: said once, of the leading run where it shows it too. */
+export function foundInRuns(runs: readonly { readonly name: string; readonly findings: readonly Finding[] }[]): Finding[] {
+  const all = [...runs].reverse().flatMap(({ name, findings }) => findings.map((finding) => ({ name, finding })));
+  const isSame = (p: Finding, q: Finding): boolean => p.code === q.code && p.level === q.level;
+  return all.flatMap(({ name, finding }, i) => {
+    if (all.slice(0, i).some((other) => other.name !== name && isSame(other.finding, finding))) return [];
+    const others = [...new Set(all.filter((other) => other.name !== name && isSame(other.finding, finding)).map((other) => other.name))].reverse();
+    return [others.length === 0 ? finding : { ...finding, text: `${finding.text} The same is found in ${named(others.map((other) => ({ name: other })))}.` }];
+  });
+}
