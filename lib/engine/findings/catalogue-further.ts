@@ -8,9 +8,9 @@ const stop = (code: string, concerns: string, rule: string, advice: string): Cat
 /** What single quantities add to the list of validations. */
 export const furtherRows: readonly CatalogueRow[] = [
   {
-    code: 'engine/peak-at-edge', numbers: [], part: 'sampling', levels: look, concerns: 'peak luminosity',
-    rule: 'The flux is largest at an end of the interval; the number is a lower bound.',
-    advice: 'Supply the record through the merger, or declare an earlier startM.',
+    code: 'engine/peak-at-edge', numbers: [], part: 'sampling', levels: look, concerns: 'peak luminosity; disc luminosity',
+    rule: 'The curve is largest at an end of the interval; the number is a lower bound.',
+    advice: 'Supply the record around its peak, or declare an earlier startM.',
   },
   {
     code: 'engine/join-in-taper', numbers: [], part: 'sampling', levels: look, concerns: 'hybrid loudness',
@@ -71,6 +71,41 @@ export const furtherRows: readonly CatalogueRow[] = [
     code: 'engine/per-field', numbers: [], part: 'fields', levels: [{ level: 'note' }], concerns: 'electromagnetic energies',
     rule: 'The file is per unit of field and the claim names no field: the number is an energy over the square of the field.',
     advice: 'Declare fieldGauss and totalMassMsun for an energy.',
+  },
+  {
+    code: 'engine/few-orbits', numbers: [], part: 'sampling', levels: look, concerns: 'eccentricity',
+    rule: 'The window holds so few orbits that the smooth fit follows them by itself, and too small an eccentricity is left.',
+    advice: 'Declare a longer window.',
+  },
+  {
+    code: 'engine/short-window', numbers: [], part: 'fields', levels: look, concerns: 'mirroring',
+    rule: 'The two records do not share the whole window around the peak; the ratio is taken over the part that they share.',
+    advice: 'Supply longer records, or declare a window inside both.',
+  },
+  {
+    code: 'engine/masses-differ', numbers: [], part: 'fields', levels: look, concerns: 'exponent of the field',
+    rule: 'The files of the series do not state one total mass; part of the slope may be the mass’s.',
+    advice: 'Compare runs at one total mass.',
+  },
+  {
+    code: 'engine/below-cutoff', numbers: [], part: 'fields', levels: [{ level: 'note' }], concerns: 'electromagnetic frequency',
+    rule: 'The frequency lies below the cut-off of the plasma: the waves are emitted and do not arrive.',
+    advice: 'Claim what is emitted, or declare the density that is meant.',
+  },
+  {
+    code: 'engine/above-eddington', numbers: [], part: 'fields', levels: [{ level: 'note' }], concerns: 'disc luminosity',
+    rule: 'The curve peaks above the Eddington luminosity of the declared mass.',
+    advice: 'Say how the gas is held.',
+  },
+  {
+    code: 'engine/accretion-balance', numbers: [], part: 'fields', levels: look, concerns: 'disc luminosity',
+    rule: 'The declared accretion rate and efficiency give another luminosity than the curve.',
+    advice: 'Check both, or say where the rest of the energy comes from.',
+  },
+  {
+    code: 'engine/cools-at-once', numbers: [], part: 'fields', levels: look, concerns: 'disc luminosity',
+    rule: 'At its peak the disc would radiate its internal energy before the gas moves once: the emission rule contradicts its own assumptions.',
+    advice: 'Let the gas cool in the simulation, or claim the luminosity as an upper bound.',
   },
   stop('engine/no-signal', 'all', 'There is nothing to compute from: no signal in the modes, along the line of sight, in the band or in the window of the claim.', 'Check modes, response, line of sight, band and window.'),
   stop('engine/too-few-points', 'detectors; detectable fraction', 'A record has fewer than 16 samples, or fewer than 5 signals stand for a family.', 'Attach more.'),

@@ -28,7 +28,7 @@ function shortRecord(axis: Float64Array, mode: Mode, { peakIndex, endShare, rate
       code: 'engine/short-ringdown',
       level: 'worth-a-look',
       where: name,
-      text: `${name} stops ${short(after)} M${times} after the peak, where ${modeName(mode)} still has ${percent(endShare)} of its largest amplitude${missing}.`,
+      text: `${name} stops ${short(after)} M${times} after its flux peaks, where the flux amplitude of ${modeName(mode)} is still ${percent(endShare)} of its largest${missing}.`,
       fix: 'Supply the record to five damping times after the peak.',
     },
   ];
