@@ -73,11 +73,6 @@ export const furtherRows: readonly CatalogueRow[] = [
     advice: 'Declare fieldGauss and totalMassMsun for an energy.',
   },
   {
-    code: 'engine/few-orbits', numbers: [], part: 'sampling', levels: look, concerns: 'eccentricity',
-    rule: 'The window holds so few orbits that the smooth fit follows them by itself, and too small an eccentricity is left.',
-    advice: 'Declare a longer window.',
-  },
-  {
     code: 'engine/short-window', numbers: [], part: 'fields', levels: look, concerns: 'mirroring',
     rule: 'The two records do not share the whole window around the peak; the ratio is taken over the part that they share.',
     advice: 'Supply longer records, or declare a window inside both.',
