@@ -9,6 +9,7 @@ import { floorRows, usedSettings } from '../tones/used-rows';
 import { relativeSlip } from '../radiation/input-rounding';
 import { followRuns, type Followed, type FollowedRun } from './followed-runs';
 import { mirroredFindings } from './series-findings';
+import type { PeakBy } from '../tones/peak';
 import { atPeakOnSamples, atPeakOnSplines, turnOfPeak, type AtPeak } from './tone-at-peak';
 import type { Tone } from '../tones/tone';
 
@@ -18,13 +19,15 @@ export interface RunScalar {
   readonly B: number;
   /** Lines that make U. */
   readonly computation: readonly BudgetLine[];
-  /** The number with one knob turned, by the id of its line: what it does to all runs alike may cancel. */
-  readonly turned?: ReadonlyMap<string, number>;
+  /** The number with each knob of a line turned, by the line's id: what it does to all runs alike may cancel. */
+  readonly turned?: Turned;
   readonly coverage: readonly BudgetLine[];
   readonly findings: readonly Finding[];
   readonly settings: readonly UsedSetting[];
   readonly assumed: readonly string[];
 }
+
+export type Turned = ReadonlyMap<string, readonly number[]>;
 
 /** Gives one number of any run. */
 export interface Meter {
@@ -69,20 +72,23 @@ const ROOT3 = Math.sqrt(3);
 /** Relative size below which no computation in double precision is trusted (engine design). */
 const LEAST = 1e-13;
 
-/** Route A with one knob turned, by the id of the budget's line. */
-function turnedOf({ tones, peakTones, startM }: FollowedRun, endM: number, which: PeakNumber): ReadonlyMap<string, number> {
-  const by = (tone: Tone, peakTone: Tone, order: 6 | 8): number => atPeakOnSamples({ tone, peakTone, startM, endM }, order)[which];
-  return new Map([['E01', by(tones.A, peakTones.A, 6)], ...(tones.floor === null ? [] : ([['E02', by(tones.coarse, peakTones.coarse, 8)]] as const))]);
+/** Route A with one knob turned at a time, by the id of the budget's line. */
+function turnedOf({ tones, peakTones, startM }: FollowedRun, endM: number, which: PeakNumber): Turned {
+  const by = (tone: Tone, peakTone: Tone, order: 6 | 8, peak: PeakBy): number => atPeakOnSamples({ tone, peakTone, startM, endM }, order, peak)[which];
+  return new Map<string, readonly number[]>([
+    ['E01', [by(tones.A, peakTones.A, 6, 'polynomial'), by(tones.A, peakTones.A, 8, 'shorter polynomial')]],
+    ...(tones.floor === null ? [] : ([['E02', [by(tones.coarse, peakTones.coarse, 8, 'polynomial')]]] as const)),
+  ]);
 }
 
-function computationOf({ tones, peakTones, waveform }: FollowedRun, here: AtPeak, turned: ReadonlyMap<string, number>, which: PeakNumber): BudgetLine[] {
+function computationOf({ tones, peakTones, waveform }: FollowedRun, here: AtPeak, turned: Turned, which: PeakNumber): BudgetLine[] {
   const value = here[which];
-  const size = (id: string): number => Math.max(Math.abs((turned.get(id) ?? Number.NaN) - value) / ROOT3, LEAST * Math.abs(value));
+  const size = (id: string): number => Math.max(turned.get(id)!.reduce((sum, other) => sum + Math.abs(other - value), 0) / ROOT3, LEAST * Math.abs(value));
   const integration: BudgetLine[] = tones.floor === null ? [] : [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: size('E02'), note: 'Interpolation of order 8 against 6 and half the points.' }];
   const digits = waveform.significantDigits;
   const slip = digits === null ? 0 : relativeSlip(digits);
   return [
-    { component: 'Interpolation and time of the peak', id: 'E01', group: 'computation', u: size('E01'), note: 'Local polynomials of order 8 against 6; half-width over √3.' },
+    { component: 'Interpolation and time of the peak', id: 'E01', group: 'computation', u: size('E01'), note: 'Local polynomials of order 8 against 6, in the reading and in the peak; changes added, half-width over √3.' },
     ...integration,
     { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: which === 'amplitude' ? slip * Math.abs(value) : Math.hypot(Math.SQRT2 * slip, turnOfPeak(tones.A, peakTones.A, here.timeM, slip)), note: digits === null ? 'Binary doubles: nothing was printed.' : `${digits} significant digits in the file.` },
   ];

@@ -18,10 +18,14 @@ export interface Made {
   readonly moves: readonly number[];
 }
 
-/** What one knob does to the result when it is turned in all runs at once; null where a run does not tell. */
+/** What a line's knobs do to the result when each is turned in all runs at once; null where a run does not tell. */
 function turnedTogether({ scalars, from, value }: Made, id: string): number | null {
-  const values = scalars.map(({ turned }) => turned?.get(id));
-  return values.every((x) => x !== undefined) ? Math.abs(from(values) - value) / ROOT3 : null;
+  const of = scalars.map(({ turned }) => turned?.get(id));
+  const knobs = of[0]?.length ?? 0;
+  if (knobs === 0 || of.some((values) => values?.length !== knobs)) return null;
+  let sum = 0;
+  for (let k = 0; k < knobs; k++) sum += Math.abs(from(of.map((values) => values![k]!)) - value);
+  return sum / ROOT3;
 }
 
 /**

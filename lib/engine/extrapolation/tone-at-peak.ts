@@ -2,7 +2,7 @@ import { derivativeOf, evaluateSplines, fitSpline, splineBasis } from '../routes
 import { gaussRule } from '../routes/b/gauss-legendre';
 import { interpolatePair } from '../series/local-interpolation';
 import { polarOf } from '../series/polar';
-import { peakOnSamples, peakOnSplines } from '../tones/peak';
+import { peakOnSamples, peakOnSplines, type PeakBy } from '../tones/peak';
 import { within, type Tone } from '../tones/tone';
 
 /** Amplitude of a tone at the peak of the waveform, and the phase it gathers from a start to there. */
@@ -32,8 +32,8 @@ const first = (axis: Float64Array): number => axis[0]!;
  * Fails:  not finite where the start lies after the peak or outside the record.
  * Source: settings.md section 6 and rule 2.10.
  */
-export function atPeakOnSamples({ tone, peakTone, startM, endM }: PeakReading, order: 6 | 8 = 8): AtPeak {
-  const timeM = peakOnSamples(within(peakTone, first(peakTone.axis), endM), order === 8 ? 'polynomial' : 'shorter polynomial') ?? endM;
+export function atPeakOnSamples({ tone, peakTone, startM, endM }: PeakReading, order: 6 | 8 = 8, peak: PeakBy = 'polynomial'): AtPeak {
+  const timeM = peakOnSamples(within(peakTone, first(peakTone.axis), endM), peak) ?? endM;
   const { amplitude, phase } = polarOf(tone);
   const read = (t: number): readonly [number, number] => {
     const [a, p] = interpolatePair({ axis: tone.axis, first: amplitude, second: phase }, { t0: t, dt: 1, n: 1 }, order);
