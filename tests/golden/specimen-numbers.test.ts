@@ -93,3 +93,43 @@ describe('how the remnant rings, and what a coarser run changes', () => {
     expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees', 'agrees', 'agrees', 'agrees']);
   });
 });
+
+/**
+ * Required: the design study (domain.md Q24, Q25 and D9: 10⁻¹⁵, 1.8×10⁴⁷ erg, 10⁻¹¹, exponent 2.00, 1.8×10⁻⁴ Hz against 1.6 kHz, 11.5 M☉), and an
+ * independent numpy script (quintic splines, fine trapezoids, padded transforms) over the same files.
+ */
+describe('an electromagnetic twin', () => {
+  beforeAll(async () => void (claims = await runFolder(folder('electromagnetic-twin'))), 120_000);
+  const components = (id: string) => claims.get(id)!.points[0]!.components!;
+  it('recomputes 1.0089e-15 and 1.0089e-11, an exponent of 2 and a ratio of 2.757e-14', () => {
+    expect(values('C1')[0]).toAgreeWith(1.00890945e-15, { relative: 1e-6 });
+    expect(values('C2')[0]).toAgreeWith(1.00890945e-11, { relative: 1e-6 });
+    expect(components('C1').erg).toAgreeWith(1.803e47, { relative: 1e-3 });
+    expect(components('C1').fieldHat).toAgreeWith(4.2446e-8, { relative: 1e-4 });
+    expect(values('C3')[0]).toAgreeWith(2.75685e-14, { relative: 1e-4 });
+    expect(values('C4')[0]).toAgreeWith(2, 1e-6);
+  });
+  it('recomputes 1.7925e-4 Hz, far below the cut-off of 1555 Hz, which only mergers below 11.5 solar masses reach', () => {
+    expect(values('C5')[0]).toAgreeWith(1.792528e-4, { relative: 1e-5 });
+    expect(components('C5').cutoffHz).toAgreeWith(1555.3816, { relative: 1e-6 });
+    expect(components('C5').massLimitMsun).toAgreeWith(11.52468, { relative: 1e-5 });
+    expect(claims.get('C5')!.findings.map(({ code }) => code)).toContain('engine/below-cutoff');
+  });
+  it('finds two signals that mirror each other, and contradicts the linear scaling and the observer', () => {
+    expect(values('C6')[0]).toAgreeWith(0, 1e-5);
+    expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'differs', 'agrees', 'agrees', 'differs', 'agrees']);
+  });
+});
+
+/** Required: the closed form the curve is made from: 1.26e45 erg/s over 1.2571e46; 1e52/1.26e45 s and 20^1.5·492.549 s. */
+describe('a disc shaken by the recoil', () => {
+  beforeAll(async () => void (claims = await runFolder(folder('shaken-disc'))), 120_000);
+  it('shines with a tenth of Eddington’s luminosity, and is marked where it cools at once', () => {
+    expect(values('C1')[0]).toAgreeWith(1.26e45 / 1.2571e46, { relative: 1e-6 });
+    const { coolingS, dynamicalS, accretionErgPerS } = claims.get('C1')!.points[0]!.components!;
+    expect([coolingS, dynamicalS, accretionErgPerS].map((x) => Number(x!.toPrecision(4)))).toEqual([7.937e6, 44050, 1.246e45]);
+    expect(claims.get('C1')!.findings).toEqual([]);
+    expect(claims.get('C2')!.findings.map(({ code }) => code)).toEqual(['engine/cools-at-once']);
+    expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees']);
+  });
+});
