@@ -1,4 +1,5 @@
 import type { ResultClaim } from '@/lib/pipeline/result';
+import { formatNumber } from '../math/format-number';
 import { roundUpUncertainty } from '../math/format-uncertainty';
 import { NumberCell, Unknown } from '../math/number-cell';
 import { Table } from '../primitives/table';
@@ -48,6 +49,21 @@ function Sum({ group, unit, label, children }: { readonly group: BudgetGroup; re
   );
 }
 
+/** Together with the computation's lines; results of earlier versions only have the group's own sum. */
+function DataSum({ claim, group }: { readonly claim: ResultClaim; readonly group: BudgetGroup }) {
+  const total = claim.uncertainty?.data;
+  const coverage = <>Coverage: <CoverageStatement coverage={claim.coverage} full /></>;
+  if (!total) return <Sum group={group} unit={claim.unit} label={<>Known part, <i>k</i> = 2</>}>{coverage}</Sum>;
+  const { interval, degreesOfFreedom } = total;
+  return (
+    <Sum group={{ ...group, expanded: total.expanded }} unit={claim.unit} label={<>{total.missing.length > 0 ? 'All known lines' : 'All lines'}, <i>k</i> = {formatNumber(total.coverageFactor, { significant: 3 })}</>}>
+      {coverage}
+      {degreesOfFreedom !== null && <> {formatNumber(degreesOfFreedom, { significant: 2 })} effective degrees of freedom.</>}
+      {interval && <> By draws, 95 %: <NumberCell value={interval.low} significant={4} unit={claim.unit} /> to <NumberCell value={interval.high} significant={4} unit={claim.unit} />.</>}
+    </Sum>
+  );
+}
+
 /** Two groups, each with its own shares: what makes U, and what only decides coverage. */
 export function BudgetTable({ claim }: { readonly claim: ResultClaim }) {
   const computation = budgetGroup(claim.budget, 'computation');
@@ -64,7 +80,7 @@ export function BudgetTable({ claim }: { readonly claim: ResultClaim }) {
         <tbody>
           <GroupHead>Chosen or not known from the files: decides coverage, not <i>U</i></GroupHead>
           <Lines group={coverage} unit={claim.unit} />
-          <Sum group={coverage} unit={claim.unit} label={<>Known part, <i>k</i> = 2</>}>Coverage: <CoverageStatement coverage={claim.coverage} full /></Sum>
+          <DataSum claim={claim} group={coverage} />
         </tbody>
       )}
     </Table>

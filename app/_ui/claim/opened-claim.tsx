@@ -8,6 +8,7 @@ import { OpenedRow } from './claim-open';
 import { PerfCell } from './claim-table';
 import { FileList } from './file-list';
 import { FindingItem } from './finding-item';
+import { MetricBoundLine } from './metric-bound';
 import { PlotsOfClaim } from './plots-of-claim';
 import { PointTable } from './point-table';
 import { CopyRows } from './print/copy-rows';
@@ -16,6 +17,7 @@ import { printSourceOf } from './print/print-source';
 import type { ClaimHeading, RecordSlots, RecordView } from './record-view';
 import { RouteTable } from './route-table';
 import { RunLog } from './run-log';
+import { SensitivityTable } from './sensitivity-table';
 import { SettingTable } from './setting-table';
 
 interface OpenedClaimProps {
@@ -74,6 +76,8 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
           <div className="grid grid-cols-1 gap-x-10 gap-y-8 mid:grid-cols-2">
             <div className="grid min-w-0 content-start gap-6 empty:hidden">{plots('below')}</div>
             {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /></Part>}
+            {claim.metricBound && <Part title="Metric bound"><MetricBoundLine bound={claim.metricBound} unit={claim.unit} /></Part>}
+            {(claim.sensitivities ?? []).length > 0 && <Part title="Sensitivities"><SensitivityTable claim={claim} /></Part>}
             <Part title="Two routes"><RouteTable claim={claim} /></Part>
             <Part title="Findings">
               {claim.findings.length === 0 ? <p className="text-ui text-ink-2">The checks found nothing to say about these data.</p> : claim.findings.map((finding, i) => <FindingItem key={`${finding.code}${i}`} finding={finding} answer={view.answerTo(finding)} />)}
