@@ -30,9 +30,8 @@ interface Unequal {
   readonly power: 1 | 3;
 }
 
-/** What a difference of spins adds. */
-function spinDifference({ eta, chi1z, chi2z }: Binary, spin: number, { d: [d10, d11, d20, d30, d31], power }: Unequal): number {
-  const delta = Math.sqrt(Math.max(0, 1 - 4 * eta));
+/** What a difference of spins adds; √(1 − 4η) is δ, which keeps its digits near equal masses. */
+function spinDifference({ eta, delta, chi1z, chi2z }: Binary, spin: number, { d: [d10, d11, d20, d30, d31], power }: Unequal): number {
   const difference = chi1z - chi2z;
   return d10 * delta * eta ** 2 * (1 + d11 * eta) * difference + d30 * spin * delta * eta ** power * (1 + d31 * eta) * difference + d20 * eta ** 3 * difference ** 2;
 }

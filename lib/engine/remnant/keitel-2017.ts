@@ -22,7 +22,7 @@ export const keitel2017 = {
  * Source: Keitel et al. 2017, PRD 96, 024006, arXiv:1612.09566, as quoted in public source text.
  */
 export function keitelLuminosity(binary: Binary): number {
-  const { eta, chi1z, chi2z } = binary;
+  const { eta, delta, chi1z, chi2z } = binary;
   const { scale, a, b, factors, d, g, h } = keitel2017;
   const s = weightedSpin(binary);
   const along = (more: number) => ([f0, f1]: readonly [number, number]): number => polynomial(eta, [f0, f1, more - 16 * f0 - 4 * f1]);
@@ -30,7 +30,6 @@ export function keitelLuminosity(binary: Binary): number {
   const [h3, h4, h7] = h.map(along(0)) as [number, number, number];
   const spinning = polynomial(s, [0, factors[0] * b[0] * g1, factors[1] * b[1] * g2, h3, h4]) / polynomial(s, [1, factors[2] * b[2] * g6, h7]);
   const difference = chi1z - chi2z;
-  const delta = Math.sqrt(Math.max(0, 1 - 4 * eta));
   const unequal = eta ** 3 * ((d[0] + d[2] * s) * delta * difference + d[1] * difference ** 2);
   return scale * eta ** 2 * (polynomial(eta, a) + spinning + unequal);
 }
