@@ -1,3 +1,4 @@
+import Link from 'next/link';
 import type { ReactNode } from 'react';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import { ClaimPlots } from '../charts/claim-plots';
@@ -6,6 +7,7 @@ import { Formula } from '../math/formula';
 import { BudgetTable } from './budget-table';
 import { OpenedRow } from './claim-open';
 import { PerfCell } from './claim-table';
+import { ComponentTable, hasComponents } from './component-table';
 import { FileList } from './file-list';
 import { FindingItem } from './finding-item';
 import { MetricBoundLine } from './metric-bound';
@@ -75,9 +77,10 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
         <td role="cell" colSpan={10}>
           <div className="grid grid-cols-1 gap-x-10 gap-y-8 mid:grid-cols-2">
             <div className="grid min-w-0 content-start gap-6 empty:hidden">{plots('below')}</div>
-            {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /></Part>}
+            {claim.budget.length > 0 && <Part title="Error budget"><BudgetTable claim={claim} /><p className="text-small"><Link href="/methods/budget" className="inline-flex min-h-8 items-center">How each part is estimated</Link></p></Part>}
             {claim.metricBound && <Part title="Metric bound"><MetricBoundLine bound={claim.metricBound} unit={claim.unit} /></Part>}
             {(claim.sensitivities ?? []).length > 0 && <Part title="Sensitivities"><SensitivityTable claim={claim} /></Part>}
+            {hasComponents(claim) && <Part title="Beside the number"><ComponentTable claim={claim} /></Part>}
             <Part title="Two routes"><RouteTable claim={claim} /></Part>
             <Part title="Findings">
               {claim.findings.length === 0 ? <p className="text-ui text-ink-2">The checks found nothing to say about these data.</p> : claim.findings.map((finding, i) => <FindingItem key={`${finding.code}${i}`} finding={finding} answer={view.answerTo(finding)} />)}
