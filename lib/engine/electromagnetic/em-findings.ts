@@ -8,9 +8,10 @@ import type { EmPoint, EmSource } from './em-point';
 const MOST_FIELD_HAT = 1e-2;
 const MOST_RATIO = 1e-3;
 
-/** Share of the way from the start to the peak that counts as before the signal, and how loud it may be. */
+/** Share of the way from the start to the peak that counts as before the signal. */
 const EARLY = 0.1;
-const LOUD = 1e-4;
+/** How loud it may be: 10⁻⁴, less a tenth, for a background that beats with the peak moves the peak itself by per cents. */
+const LOUD = 0.9e-4;
 
 /**
  * V30: a field or an energy at which the B² rule is not justified; said of the worst of several points.
