@@ -1,5 +1,6 @@
 import { completeModes } from '../conditioning/complete-modes';
 import type { Finding } from '../contract/finding';
+import { mirroringWindow } from '../contract/house-values';
 import type { MeasureRequest } from '../contract/quantity';
 import type { ModeIndex } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
@@ -10,9 +11,6 @@ import { toneName, toneOfMode, type Tone } from '../tones/tone';
 import { curvatureTones, type CurvatureTones } from './curvature-tone';
 import type { MirrorWindow } from './mirror-by-routes';
 import { phi2Record } from './phi2-record';
-
-/** From ψ₄'s peak, in M, unless `window` says otherwise. */
-export const mirrorWindowM = [-100, 40] as const;
 
 const houseMode: ModeIndex = [2, 2];
 
@@ -72,7 +70,7 @@ export function mirrorPoint(request: MeasureRequest): MirrorPoint | Finding {
   if (waves === null) return missing(gw.name, mode);
   const peaks = peakTones(records, { em: light, gw: waves });
   return {
-    em: light, gw: waves, peakEm: peaks.em, peakGw: peaks.gw, mode, windowM: window ?? mirrorWindowM,
+    em: light, gw: waves, peakEm: peaks.em, peakGw: peaks.gw, mode, windowM: window ?? mirroringWindow,
     severalModes: records.em.modes.length > 1,
     emWaveform: em, gwWaveform: gw, mirrored: mode[1] < 0 && completeModes(gw).mirrorAssumed,
   };

@@ -1,5 +1,6 @@
 import { END_CYCLES, OPEN_FRACTION, START_CYCLES } from '@/lib/engine/conditioning/taper-window';
 import { houseValues } from '@/lib/engine/contract/house-values';
+import { EDDINGTON_ERG_PER_S, FIELD_UNIT_GAUSS, PLASMA_HZ } from '@/lib/engine/electromagnetic/em-units';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
 import { C_M_PER_S, GMSUN_M3_PER_S2, MPC_M, MSUN_S } from '@/lib/engine/units/constants';
 import { EVEN_TO } from '@/lib/formats/axis';
@@ -23,6 +24,9 @@ const values: Readonly<Record<string, string>> = {
   startCycles: spelt(START_CYCLES),
   endCycles: spelt(END_CYCLES),
   uniformStep: spelt(EVEN_TO),
+  fieldUnit: spelt(FIELD_UNIT_GAUSS),
+  eddington: spelt(EDDINGTON_ERG_PER_S),
+  plasma: spelt(PLASMA_HZ),
   maximise: houseValues.maximise.join(' and '),
 };
 
