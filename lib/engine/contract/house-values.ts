@@ -36,8 +36,15 @@ export const houseValues = {
 /** From the peak, in M: where a ringdown is fitted unless `window` says otherwise. `window` has another default for each quantity. */
 export const ringdownWindow = [25, 60] as const;
 
+/** From ψ₄'s peak, in M: where two waves are compared unless `window` says otherwise. */
+export const mirroringWindow = [-100, 40] as const;
+
 /** The match at which a signal counts as seen, unless `threshold` says otherwise. */
 export const houseMatchThreshold = 0.965;
+
+/** What an order is measured in, and what is carried to a limit, unless `observable` says otherwise. */
+export const houseOrderObservable = 'dominant';
+export const houseLimitObservable = 'radiated-energy';
 
 /** The mass to which a recoil is referred unless `normaliseBy` says otherwise. */
 export const houseRecoilMass = 'remnant';

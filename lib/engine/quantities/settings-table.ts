@@ -1,5 +1,5 @@
 import type { Quantity } from '@/lib/engine/contract/quantity';
-import { houseMatchThreshold, houseRecoilMass, houseValues, ringdownWindow } from '@/lib/engine/contract/house-values';
+import { houseLimitObservable, houseMatchThreshold, houseOrderObservable, houseRecoilMass, houseValues, mirroringWindow, ringdownWindow } from '@/lib/engine/contract/house-values';
 import { observables, publishedFits, type SettingName } from '@/lib/engine/contract/settings';
 
 /**
@@ -60,7 +60,7 @@ const rows: readonly SettingRow[] = [
   row('threshold', { kind: 'number', above: 0 }, '', `${said('threshold')} for loudness, ${houseMatchThreshold} for a detectable fraction`, 'The loudness, or the match, at which something counts as seen.'),
   row('cosmology', { kind: 'cosmology' }, '', `h0 ${h0} km/s/Mpc, omegaM ${omegaM}, flat`, 'Expansion used between redshift and distance.'),
   row('startM', { kind: 'number' }, 'M', 'the declared end of the start-up burst, else the first sample', 'Start of integrals over time.'),
-  row('window', { kind: 'interval' }, 'M', `for a ringdown [${ringdownWindow.join(', ')}] after the peak; for an alignment from 10 % to 40 % of the way from the later start to the peak of the first record; for an order from the latest start of the runs to where the finest one falls below a tenth of its peak`, 'Interval of time that is used: counted from the peak for a ringdown, on the first record’s own times for an alignment, on the times of the runs for an order.'),
+  row('window', { kind: 'interval' }, 'M', `for a ringdown [${ringdownWindow.join(', ')}] after the peak; [${mirroringWindow.join(', ')}] around the peak of ψ₄ for a mirroring; for an alignment from 10 % to 40 % of the way from the later start to the peak of the first record; for an order from the latest start of the runs to where the finest one falls below a tenth of its peak`, 'Interval of time that is used: counted from the peak for a ringdown or a mirroring, on the first record’s own times for an alignment, on the times of the runs for an order.'),
   row('alignment', { kind: 'place', options: ['window', 'peak', 'none'], numbers: [{ name: 'frequencyM', above: 0 }] }, '', said('alignment'), 'How the second record is laid over the first in time and phase: over the window, at the peaks, where both reach a frequency (rad/M), or not at all.'),
   row('at', { kind: 'place', options: ['peak', 'end', 'window', 'maximum'], numbers: [{ name: 'timeM' }, { name: 'frequencyM', above: 0 }], flags: ['ringdown'], swept: 'timeM' }, 'M', `${said('at')}; {"ringdown": true} for an electromagnetic frequency`, 'Where a curve is read: at the peak or the end of the first record, as a mean over the window, where it is largest, at a time, or where the first record reaches a frequency (rad/M); for an electromagnetic frequency also the value of the ringdown.'),
   row('integrationFloor', { kind: 'number', above: 0 }, 'rad/M', 'half of ω₂₂ at the start', 'Lowest frequency by which a time integral divides.'),
@@ -75,7 +75,7 @@ const rows: readonly SettingRow[] = [
   row('extrapolationOrder', { kind: 'integer', min: 1, max: 4 }, '', said('extrapolationOrder'), 'Degree of the polynomial in 1/r.'),
   row('weight', { kind: 'choice', options: ['plane', 'diagonal', 'plane-volume', 'diagonal-volume'] }, '', said('weight'), 'Measure over spins: both uniform and independent, equal spins uniform, or either times the volume in which the signal is heard.'),
   row('statistic', { kind: 'choice', options: ['minimum', 'mean', 'weighted'] }, '', said('statistic'), 'Which number stands for all azimuths: the least match, the mean, or the mean weighted by loudness.'),
-  row('observable', { kind: 'choice', options: observables }, '', 'mass for a fit, dominant for an order, radiated-energy for an extrapolation', 'What is fitted, compared or extrapolated.'),
+  row('observable', { kind: 'choice', options: observables }, '', `mass for a fit, ${houseOrderObservable} for an order, ${houseLimitObservable} for an extrapolation`, 'What is fitted, compared or extrapolated.'),
   row('method', { kind: 'choice', options: ['balance-adm', 'balance-pn', 'ringdown'] }, '', 'balance-adm when the initial energy is stated, else balance-pn', 'How the remnant is found: what was there less what left, from the stated or the post-Newtonian start, or from its ringing.'),
   row('fit', { kind: 'choice', options: publishedFits }, '', `${said('fit')} of the fits that apply`, 'Which published fit is evaluated.'),
   row('fieldGauss', { kind: 'number', min: 1, max: 1e18 }, 'G', 'as computed; nothing is rescaled', 'Magnetic field to which electromagnetic energy is rescaled.'),
