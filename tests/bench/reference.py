@@ -44,6 +44,40 @@ def sweep(path, n, masses, f_low, f_high):
     return {"seconds": time.perf_counter() - started, "cpuSeconds": time.process_time() - spent, "matches": matches}
 
 
+def bank(path, lengths, mass, factors, f_low, f_high):
+    """A fitting factor over a bank: one spline a template, then every template at every mass."""
+    data = np.fromfile(path)
+    started, spent = time.perf_counter(), time.process_time()
+    records, at = [], 0
+    for n in lengths:
+        records.append((data[at : at + n], data[at + n : at + 2 * n]))
+        at += 2 * n
+    longest = max(t[-1] for t, _ in records) * max(factors) + records[0][0][-1]
+    n = 2 ** int(np.ceil(np.log2(longest * mass * MSUN_S * RATE_HZ)))
+    f = np.arange(n // 2 + 1) * RATE_HZ / n
+    weight = np.zeros(len(f))
+    band = (f >= f_low) & (f <= f_high)
+    weight[band] = 1 / noise(f[band])
+
+    def spectrum(spline, end, total):
+        return scipy.fft.rfft(spline(np.arange(0, end, 1 / RATE_HZ / (total * MSUN_S))), n)
+
+    splines = [(CubicSpline(t, h), t[-1]) for t, h in records]
+    a = spectrum(*splines[0], mass)
+    weighted, norm_a = a * weight, np.sum(abs(a) ** 2 * weight)
+    best, where = 0.0, (0, 1.0)
+    product = np.zeros(n, complex)
+    for index, (spline, end) in enumerate(splines[1:]):
+        for factor in factors:
+            b = spectrum(spline, end, mass * factor)
+            product[: len(f)] = weighted * b.conj()
+            value = abs(scipy.fft.ifft(product)).max() * n / np.sqrt(norm_a * np.sum(abs(b) ** 2 * weight))
+            if value > best:
+                best, where = float(value), (index, factor)
+    spent = time.process_time() - spent
+    return {"seconds": time.perf_counter() - started, "cpuSeconds": spent, "best": best, "index": where[0], "factor": where[1]}
+
+
 def parse(path):
     started, spent = time.perf_counter(), time.process_time()
     table = np.loadtxt(path)
@@ -54,6 +88,8 @@ for line in sys.stdin:
     request = json.loads(line)
     if request["do"] == "sweep":
         answer = sweep(request["path"], request["n"], request["masses"], request["fLowHz"], request["fHighHz"])
+    elif request["do"] == "bank":
+        answer = bank(request["path"], request["lengths"], request["mass"], request["factors"], request["fLowHz"], request["fHighHz"])
     elif request["do"] == "parse":
         answer = parse(request["path"])
     else:

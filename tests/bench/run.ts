@@ -6,9 +6,12 @@ import { execFileSync } from 'node:child_process';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { cpus, tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { taperWeightAt } from '@/lib/engine/conditioning/taper-window';
+import type { BestTemplate } from '@/lib/engine/contract/route';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { createRouteA } from '@/lib/engine/routes/a/route-a';
 import { ENGINE_VERSION } from '@/lib/engine/version';
+import { bankSide, fittingFactor, makeBank, massFactors, signalMassMsun, type Bank } from './bank';
 import { errorBarCost } from './error-bar';
 import { parseTable, writeTable } from './parse';
 import { openReference, type Reference } from './reference';
@@ -19,6 +22,7 @@ import { fHighHz, fLowHz, makePair, masses, samples, sweepBase } from './sweep';
 const rounds = 5;
 /** The engine's run is a tenth as long: several of them meet the load that one of the script meets. */
 const runsARound = 4;
+const bankRounds = 3;
 const parsedRows = 500_000;
 
 const plusOf = ({ content }: Waveform): Float64Array => {
@@ -56,6 +60,39 @@ async function benchSweep(pair: readonly [Waveform, Waveform], reference: Refere
   ];
 }
 
+/** Every record of the bank, the signal first: times from 0 and the tapered plus strain face-on, one after the other. */
+function writeBank(path: string, { signal, templates }: Bank): number[] {
+  const parts = [signal, ...templates].flatMap((given) => {
+    const { taper, waveform } = bankSide(given);
+    const plus = plusOf(waveform).map((x, i) => x * taperWeightAt(taper, waveform.axis[i]!));
+    return [waveform.axis, plus];
+  });
+  writeFileSync(path, Buffer.concat(parts.map((x) => Buffer.from(x.buffer, x.byteOffset, x.byteLength))));
+  return [signal, ...templates].map(({ axis }) => axis.length);
+}
+
+async function benchBank(reference: Reference, folder: string): Promise<Row> {
+  const bank = makeBank();
+  const path = join(folder, 'bank.bin');
+  const lengths = writeBank(path, bank);
+  const request = { do: 'bank', path, lengths, mass: signalMassMsun, factors: massFactors, fLowHz, fHighHz };
+  const [ours, theirs]: [(Spent & { value: BestTemplate })[], (Spent & { best: number; index: number })[]] = [[], []];
+  for (let round = 0; round < bankRounds; round++) {
+    theirs.push(await reference.ask<Spent & { best: number; index: number }>(request));
+    for (let again = 0; again < runsARound; again++) ours.push(await timed(() => fittingFactor(createRouteA(), bank)));
+    console.log(`bank, round ${round + 1}: script ${theirs[round]?.cpuSeconds.toFixed(2)} s, engine ${ours.at(-1)?.cpuSeconds.toFixed(2)} s`);
+  }
+  const [best, script] = [quickest(ours), quickest(theirs)];
+  const { index, outcome } = best.value;
+  return {
+    what: `fitting factor over ${bank.templates.length} templates × ${massFactors.length} masses (curve A2, ${fLowHz}–${fHighHz} Hz, records of 1 200 to 3 000 M)`,
+    ours: best,
+    theirs: script,
+    target: '≥ 30',
+    note: `engine: ${outcome.match.toFixed(6)} with template ${index}, mass refined; script: ${script.best.toFixed(6)} with template ${script.index}, grid only`,
+  };
+}
+
 async function benchErrorBar(pair: readonly [Waveform, Waveform]): Promise<string> {
   const costs = [];
   for (let round = 0; round < 3; round++) costs.push(await errorBarCost(pair));
@@ -88,6 +125,7 @@ try {
   const pair = makePair();
   const rows = await benchSweep(pair, reference, folder);
   const errorBar = await benchErrorBar(pair);
+  rows.push(await benchBank(reference, folder));
   rows.push(await benchParse(reference, folder));
   const commit = execFileSync('git', ['rev-parse', '--short', 'HEAD'], { encoding: 'utf8' }).trim();
   const machine = `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.versions.node}, engine ${ENGINE_VERSION} (${commit}), Python ${versions.python}, numpy ${versions.numpy}, scipy ${versions.scipy}`;

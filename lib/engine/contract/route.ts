@@ -67,6 +67,19 @@ export interface MatchRequest {
   readonly rescale: (b: Side, factor: number) => Side;
 }
 
+/** A list of templates to which signals are compared one by one. */
+export interface TemplateRequest extends Omit<MatchRequest, 'a' | 'b'> {
+  readonly templates: readonly Side[];
+  /** Asked now and then with the share that is done; throws to stop. */
+  readonly onStep?: (share: number) => void;
+}
+
+/** The template with the largest match, the first of several equal ones. */
+export interface BestTemplate {
+  readonly index: number;
+  readonly outcome: MatchOutcome;
+}
+
 /** A direction from which modes are looked at. */
 export interface Sight {
   readonly inclinationRad: number;
@@ -81,6 +94,8 @@ export interface SightMatch {
   /** Whence b is seen at the maximum, and by how much it was moved (later > 0). */
   readonly b: Sight;
   readonly timeShiftS: number;
+  /** Factor on b's mass, when maximised over. */
+  readonly massFactor?: number;
 }
 
 /** Products of the modes of two waveforms taken once, for any number of sights. */
@@ -118,6 +133,8 @@ export interface DetectorRoute {
   readonly modePower: (side: Side, band: Band) => number;
   readonly overlap: (a: Side, b: Side, band: Band, response: Response) => number;
   readonly match: (request: MatchRequest) => MatchOutcome;
+  /** For each signal the template that fits it best: what `match` of every pair would find. */
+  readonly bestTemplates: (signals: readonly Side[], request: TemplateRequest) => readonly BestTemplate[];
   /** ‖a − b aligned‖² with actual amplitudes, for `rhoWithAmplitude`. */
   readonly residualPower: (request: MatchRequest, at: MatchOutcome) => number;
 }

@@ -50,7 +50,8 @@ const AZIMUTH_STEP = Math.PI / 24;
 /** A maximum this close to a bound of the mass range is on it. */
 const BOUND_SHARE = 1e-6;
 
-function massGrid([low, high]: readonly [number, number]): number[] {
+/** Factors on the template's mass, ends included. */
+export function massGrid([low, high]: readonly [number, number]): number[] {
   const steps = Math.max(1, Math.ceil(Math.log(high / low) / Math.log(MASS_RATIO)));
   return Array.from({ length: steps + 1 }, (_, i) => low * (high / low) ** (i / steps));
 }
@@ -111,7 +112,7 @@ export class JointSearch {
     return { a: spectra[0]!, b, weights, lagStride, secondsPerUnit: sides.map((side) => side.secondsPerUnit) };
   }
 
-  private valueAt(placement: Placement): number {
+  valueAt(placement: Placement): number {
     const { response, maximise, b } = this.request;
     const { value } = align(this.pairAt(placement), freedomOf(response, maximise, b.waveform.content.kind === 'modes'));
     return Number.isNaN(value) ? -Infinity : value;
@@ -176,12 +177,21 @@ export class JointSearch {
     const { request, searched } = this;
     const still = { massFactor: 1, inclinationRad: request.b.inclinationRad, azimuthShiftRad: 0 };
     const none = !searched.mass && !searched.inclination && !searched.azimuth;
-    const refined = none ? [] : this.starts().map((start) => this.refined(start));
-    const best = refined.reduce((p, q) => (q.value > p.value ? q : p), refined[0] ?? { placement: still, value: 0 });
-    const pair = this.pairAt(best.placement);
+    return none ? this.at(still) : this.at(this.bestPlacement(still));
+  }
+
+  private bestPlacement(still: Placement): Placement {
+    const refined = this.starts().map((start) => this.refined(start));
+    return refined.reduce((p, q) => (q.value > p.value ? q : p), refined[0] ?? { placement: still, value: 0 }).placement;
+  }
+
+  /** The outcome at one placement, wherever it came from. */
+  at(placement: Placement): JointOutcome {
+    const { request, searched } = this;
+    const pair = this.pairAt(placement);
     const alignment = align(pair, freedomOf(request.response, request.maximise, request.b.waveform.content.kind === 'modes'));
     const [low, high] = request.templateMassRange;
-    const near = (bound: number): boolean => Math.abs(Math.log(best.placement.massFactor / bound)) < BOUND_SHARE;
-    return { pair, alignment, placement: best.placement, onBound: searched.mass && (near(low) || near(high)) };
+    const near = (bound: number): boolean => Math.abs(Math.log(placement.massFactor / bound)) < BOUND_SHARE;
+    return { pair, alignment, placement, onBound: searched.mass && (near(low) || near(high)) };
   }
 }

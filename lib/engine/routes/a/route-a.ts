@@ -1,6 +1,7 @@
-import type { Band, DetectorRoute, MatchOutcome, MatchRequest, ResponseGram, Side } from '@/lib/engine/contract/route';
+import type { Band, BestTemplate, DetectorRoute, MatchOutcome, MatchRequest, ResponseGram, Side, TemplateRequest } from '@/lib/engine/contract/route';
 import type { Response } from '@/lib/engine/contract/settings';
 import { residualSum, shiftS, xOfShift, type Pair } from './alignment';
+import { bestByPairs, bestPlaces, isScannable, pairRequest } from './best-templates';
 import { channelsOf, power, realResponse } from './cross-spectrum';
 import { JointSearch, searchedIn, type Placement } from './joint-search';
 import { lineSpectrum, modeBank } from './mode-bank';
@@ -60,9 +61,28 @@ function turnAt(request: MatchRequest, at: MatchOutcome): number {
   return request.maximise.includes('phase') ? -at.phaseShiftRad : 2 * (at.polarisationRad ?? 0);
 }
 
+/** A template whose mass alone is searched for is a bank of one. */
 function outcomeOf(request: MatchRequest, store: SpectrumStore, numerics: Numerics): MatchOutcome {
+  const { a, b, ...shared } = request;
+  const bank = { ...shared, templates: [b] };
+  if (!request.maximise.includes('templateMass') || !isScannable([a], bank)) return searchedOutcome(request, null, store, numerics);
+  return searchedOutcome(request, bestPlaces([a], bank, { store, numerics })[0]!.massFactor, store, numerics);
+}
+
+function bestTemplates(signals: readonly Side[], request: TemplateRequest, store: SpectrumStore, numerics: Numerics): BestTemplate[] {
+  const searches = request.templates.length > 1 || request.maximise.includes('templateMass');
+  if (!searches || !isScannable(signals, request)) return bestByPairs(signals, request, (pair) => searchedOutcome(pair, null, store, numerics));
+  return bestPlaces(signals, request, { store, numerics }).map(({ index, massFactor }, s) => ({
+    index,
+    outcome: searchedOutcome(pairRequest(request, signals[s]!, index), massFactor, store, numerics),
+  }));
+}
+
+/** The joint search, or its outcome at a factor on b's mass that is known already. */
+function searchedOutcome(request: MatchRequest, massFactor: number | null, store: SpectrumStore, numerics: Numerics): MatchOutcome {
   const searched = searchedIn(request);
-  const { pair, alignment, placement, onBound } = new JointSearch(request, searched, store, numerics).run();
+  const search = new JointSearch(request, searched, store, numerics);
+  const { pair, alignment, placement, onBound } = massFactor === null ? search.run() : search.at({ massFactor, inclinationRad: request.b.inclinationRad, azimuthShiftRad: 0 });
   const { norms } = alignment;
   const scales = [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] as const;
   const mismatch =
@@ -158,6 +178,7 @@ export function createRouteA(numerics: Numerics = houseNumerics, store: Spectrum
     modePower: (side, band) => modePower(side, band, store, numerics),
     overlap,
     match: (request) => outcomeOf(request, store, numerics),
+    bestTemplates: (signals, request) => bestTemplates(signals, request, store, numerics),
     residualPower: (request, at) => residualPower(request, at, store, numerics),
   };
 }

@@ -147,7 +147,29 @@ function turnsOf(request: MatchRequest, best: Tried): Pick<MatchOutcome, 'phaseS
  */
 export function bestMatch(request: MatchRequest, sourceOf: SourceOf, knobs: RouteBKnobs): MatchOutcome {
   const search = prepare(request, sourceOf, knobs);
-  const best = searchPoses(request, search);
+  return outcomeOf(request, search, searchPoses(request, search));
+}
+
+/** Looks need the hills only. */
+const LOOK_GOAL = 1e-6;
+
+/** The matches at a few factors on b's mass, on fewer nodes. */
+export function looksAt(request: MatchRequest, factors: readonly number[], sourceOf: SourceOf, knobs: RouteBKnobs): number[] {
+  const search = prepare(request, sourceOf, { ...knobs, quadrature: LOOK_GOAL });
+  const { inclinationRad, azimuthRad } = request.b;
+  return factors.map((massFactor) => tryPose(search, { massFactor, inclinationRad, azimuthRad }).match);
+}
+
+/** The top of the hill between two factors on b's mass. */
+export function climbMass(request: MatchRequest, low: number, high: number, sourceOf: SourceOf, knobs: RouteBKnobs): MatchOutcome {
+  const search = prepare(request, sourceOf, knobs);
+  const { inclinationRad, azimuthRad } = request.b;
+  const poseAt = (x: number): Pose => ({ massFactor: Math.min(high, Math.max(low, Math.exp(x))), inclinationRad, azimuthRad });
+  const summit = goldenMaximum((x) => tryPose(search, poseAt(x)).match, Math.log(low), Math.log(high), REFINED);
+  return outcomeOf(request, search, tryPose(search, poseAt(summit.x[0]!)));
+}
+
+function outcomeOf(request: MatchRequest, search: Search, best: Tried): MatchOutcome {
   const { source, channels } = search.posed(best.pose);
   const { f, weight } = search.nodes;
   const normB = Math.sqrt(normSquared(channels, weight));

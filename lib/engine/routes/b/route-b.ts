@@ -3,11 +3,12 @@ import type { Response } from '../../contract/settings';
 import { channelsOf, normSquared } from './channels';
 import { DEFAULT_GOAL, frequencyNodes } from './frequency-panels';
 import { frequencySource } from './frequency-source';
-import { alignedResidual, bestMatch } from './best-match';
+import { alignedResidual, bestMatch, climbMass, looksAt } from './best-match';
 import { modeGram, type Sight } from './mode-gram';
 import { nodesFor } from './shared-nodes';
 import { sightMatcher } from './sight-matcher';
 import type { RouteBKnobs, Source } from './spectrum';
+import { bestTemplatesByClimbing, type PairSearch } from './template-climb';
 import { timeSource } from './time-source';
 
 const DEFAULT_KNOBS: RouteBKnobs = { thinning: 2, quadrature: DEFAULT_GOAL };
@@ -70,6 +71,11 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
     const request = { a, b, band, response, maximise: [], templateMassRange: [1, 1] as const, rescale: (side: Side) => side };
     return bestMatch(request, source, knobs).match;
   };
+  const pairs: PairSearch = {
+    look: (pair, factors) => looksAt(pair, factors, source, knobs),
+    climb: (pair, low, high) => climbMass(pair, low, high, source, knobs),
+    whole: (pair) => bestMatch(pair, source, knobs),
+  };
   return {
     name: 'B',
     gram: (side, band) => gram(side, band, knobs),
@@ -79,6 +85,7 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
     modePower: (side, band) => modePower(side, band, knobs),
     overlap,
     match: (request) => bestMatch(request, source, knobs),
+    bestTemplates: (signals, request) => bestTemplatesByClimbing(signals, request, pairs),
     residualPower: (request, at) => alignedResidual(request, at, source, knobs),
   };
 }

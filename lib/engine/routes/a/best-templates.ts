@@ -1,0 +1,186 @@
+import type { BestTemplate, MatchRequest, Side, TemplateRequest } from '@/lib/engine/contract/route';
+import type { Response } from '@/lib/engine/contract/settings';
+import { brentMaximum, type Top } from '@/lib/engine/series/brent-maximum';
+import { JointSearch, massGrid } from './joint-search';
+import type { Numerics } from './numerics';
+import type { SpectrumStore } from './spectrum-store';
+import { scanTemplates, type TemplateScan } from './template-scan';
+
+export interface Context {
+  readonly store: SpectrumStore;
+  readonly numerics: Numerics;
+}
+
+/** Where a signal's best template stands, before its outcome is read. */
+export interface BestPlace {
+  readonly index: number;
+  readonly massFactor: number;
+}
+
+type RealRequest = TemplateRequest & { readonly response: Exclude<Response, 'complex'> };
+
+/** A shift and a turn are found by one transform, a mass by stretching frequencies; any other freedom is searched pair by pair. */
+export function isScannable(signals: readonly Side[], request: TemplateRequest): request is RealRequest {
+  const free = new Set(request.maximise);
+  const known = [...free].every((what) => what === 'time' || what === 'phase' || what === 'templateMass');
+  return known && free.has('time') && free.has('phase') && request.response !== 'complex' && [...signals, ...request.templates].every(({ waveform }) => waveform.domain === 'time');
+}
+
+export const pairRequest = ({ templates, onStep: _, ...shared }: TemplateRequest, a: Side, index: number): MatchRequest => ({ ...shared, a, b: templates[index]! });
+
+/** What the rough values of a scan can be low by. */
+const ROUGH = 0.01;
+/** What the sharp ones can be off by. */
+const SHARP = 5e-5;
+/** Of ln of the factor (rule 2.7). */
+const REFINED = 1e-5;
+/** Numbers kept by one scan. */
+const MOST_PAIRS = 1 << 24;
+
+interface Hill {
+  readonly template: number;
+  /** Place in the grid of factors. */
+  readonly factor: number;
+  /** No mass beside this grid point gives more. */
+  readonly ceiling: number;
+}
+
+/** Sharp values of one signal, each computed once. */
+class SharpValues {
+  private readonly known = new Map<number, number>();
+
+  constructor(
+    private readonly scan: TemplateScan,
+    private readonly signal: number,
+    private readonly factors: readonly number[],
+  ) {}
+
+  at(template: number, g: number): number {
+    const key = template * this.factors.length + g;
+    const known = this.known.get(key);
+    if (known !== undefined) return known;
+    const made = this.scan.sharp(this.signal, template, this.factors[g]!);
+    this.known.set(key, made);
+    return made;
+  }
+}
+
+/** Grid points that could stand beside the best match, by mass, since a scan holds the spectra of one mass at a time. */
+function likely(scan: TemplateScan, s: number, templates: number, factors: number): { t: number; g: number }[] {
+  const rough = (t: number, g: number): number => scan.rough[(s * templates + t) * factors + g]!;
+  let best = 0;
+  for (let t = 0; t < templates; t++) for (let g = 0; g < factors; g++) best = Math.max(best, rough(t, g));
+  const found: { t: number; g: number }[] = [];
+  for (let g = 0; g < factors; g++) {
+    for (let t = 0; t < templates; t++) {
+      const around = Math.max(rough(t, Math.max(0, g - 1)), rough(t, g), rough(t, Math.min(factors - 1, g + 1)));
+      const drop = around - Math.min(rough(t, Math.max(0, g - 1)), rough(t, Math.min(factors - 1, g + 1)));
+      // What the hill may rise between grid points counts as well.
+      if (rough(t, g) + drop > best * (1 - ROUGH) && rough(t, g) > around * (1 - ROUGH)) found.push({ t, g });
+    }
+  }
+  return found;
+}
+
+const QUARTIC_POINTS = 33;
+/** The polynomial through values at −2 … 2. */
+function quartic([a, b, c, d, e]: readonly number[], x: number): number {
+  const [p, q] = [(b! + d!) / 2, (d! - b!) / 2];
+  const [r, s] = [(a! + e!) / 2, (e! - a!) / 2];
+  const [even4, odd3] = [(r - c! - 4 * (p - c!)) / 12, (s - 2 * q) / 6];
+  const [even2, odd1] = [p - c! - even4, q - odd3];
+  return c! + x * (odd1 + x * (even2 + x * (odd3 + x * even4)));
+}
+
+/**
+ * How far a hill may rise above its grid point. Where five points stand in a row, the quartic through them and the parabola
+ * through three differ by more than either errs, twice that is allowed; else half the drop to the farther neighbour, twice
+ * what a hill of constant bend can rise.
+ */
+function riseOf(values: SharpValues, t: number, g: number, factors: number): number {
+  const here = values.at(t, g);
+  if (factors === 1) return 0;
+  const beside = [Math.max(0, g - 1), Math.min(factors - 1, g + 1)].map((at) => values.at(t, at));
+  const drop = here - Math.min(...beside);
+  if (g < 2 || g + 2 >= factors || Math.max(...beside) > here) return Math.max(0, drop / 2);
+  const five = [-2, -1, 0, 1, 2].map((step) => values.at(t, g + step));
+  let [four, two] = [0, 0];
+  for (let i = 0; i <= QUARTIC_POINTS; i++) {
+    const x = (2 * i) / QUARTIC_POINTS - 1;
+    four = Math.max(four, quartic(five, x) - here);
+    two = Math.max(two, ((five[3]! - five[1]!) / 2) * x + ((five[1]! + five[3]!) / 2 - here) * x * x);
+  }
+  return Math.min(drop / 2, Math.max(four, two) + 2 * Math.abs(four - two));
+}
+
+/** Grid points above both neighbours that could hide the best match, the most promising first. */
+function hillsOf(scan: TemplateScan, s: number, templates: number, factors: readonly number[]): Hill[] {
+  const values = new SharpValues(scan, s, factors);
+  const places = likely(scan, s, templates, factors.length);
+  for (const { t, g } of places) values.at(t, g);
+  const hills = places.flatMap(({ t, g }): Hill[] => {
+    const here = values.at(t, g);
+    const beside = [g - 1, g + 1].filter((at) => at >= 0 && at < factors.length);
+    if (beside.some((at) => values.at(t, at) > here + SHARP)) return [];
+    return [{ template: t, factor: g, ceiling: here + riseOf(values, t, g, factors.length) + SHARP }];
+  });
+  return hills.sort((p, q) => q.ceiling - p.ceiling || p.template - q.template || p.factor - q.factor);
+}
+
+/** The top of one hill: its place by the scan, its height on the route's own bins. */
+function topOf(scan: TemplateScan, s: number, { template, factor }: Hill, a: Side, request: RealRequest, factors: readonly number[], { store, numerics }: Context): Top {
+  const searched = { mass: factors.length > 1, inclination: false, azimuth: false };
+  const search = new JointSearch(pairRequest(request, a, template), searched, store, numerics);
+  const height = (massFactor: number): Top => ({ x: massFactor, value: search.valueAt({ massFactor, inclinationRad: request.templates[template]!.inclinationRad, azimuthShiftRad: 0 }) });
+  const here = factors[factor]!;
+  if (factors.length === 1) return height(here);
+  const [low, high] = [factors[Math.max(0, factor - 1)]!, factors[Math.min(factors.length - 1, factor + 1)]!];
+  const found = brentMaximum((x) => scan.sharp(s, template, Math.exp(x)), Math.log(low), Math.log(high), Math.log(here), REFINED);
+  // The ends of the range are the range's own numbers, not e^{ln x}.
+  return height([low, high].find((x) => Math.abs(found.x - Math.log(x)) < 1e-14) ?? Math.exp(found.x));
+}
+
+function bestOf(scan: TemplateScan, s: number, a: Side, request: RealRequest, factors: readonly number[], context: Context): BestPlace {
+  let best: BestPlace & { readonly value: number } = { index: 0, massFactor: 1, value: -Infinity };
+  for (const hill of hillsOf(scan, s, request.templates.length, factors)) {
+    if (hill.ceiling < best.value) break;
+    const { x, value } = topOf(scan, s, hill, a, request, factors, context);
+    if (value > best.value || (value === best.value && hill.template < best.index)) best = { index: hill.template, massFactor: x, value };
+  }
+  return best;
+}
+
+/**
+ * The best template of each signal, and the factor on its mass.
+ * Shape:  one place a signal. Memory: the held spectra cut to the band, and one number for each signal, template and factor.
+ * Units:  factors on the template's own mass.
+ * Error:  the factor to 1e-5; the template is that of the full search as long as a hill between grid points rises by no more than it falls to its neighbours.
+ * Fails:  never; signals without power in the band get the first template.
+ * Source: settings.md rule 2.7 (grid of ratio 1.02, then refined to 1e-5).
+ */
+export function bestPlaces(signals: readonly Side[], request: RealRequest, context: Context): BestPlace[] {
+  const factors = request.maximise.includes('templateMass') ? massGrid(request.templateMassRange) : [1];
+  const together = Math.max(1, Math.floor(MOST_PAIRS / (request.templates.length * factors.length)));
+  const places: BestPlace[] = [];
+  for (let from = 0; from < signals.length; from += together) {
+    const some = signals.slice(from, from + together);
+    const onStep = (share: number): void => request.onStep?.((from + share * some.length) / signals.length);
+    const scan = scanTemplates({ signals: some, factors, request: { ...request, onStep }, ...context });
+    places.push(...some.map((a, s) => bestOf(scan, s, a, request, factors, context)));
+  }
+  return places;
+}
+
+/** Pair by pair, as `match` does it. */
+export function bestByPairs(signals: readonly Side[], request: TemplateRequest, matchOf: (pair: MatchRequest) => BestTemplate['outcome']): BestTemplate[] {
+  const pairs = signals.length * request.templates.length;
+  return signals.map((a, s) => {
+    let best: BestTemplate | null = null;
+    request.templates.forEach((_, index) => {
+      request.onStep?.((s * request.templates.length + index) / pairs);
+      const outcome = matchOf(pairRequest(request, a, index));
+      if (best === null || outcome.match > best.outcome.match || (Number.isNaN(best.outcome.match) && !Number.isNaN(outcome.match))) best = { index, outcome };
+    });
+    return best!;
+  });
+}
