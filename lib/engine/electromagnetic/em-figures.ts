@@ -52,7 +52,7 @@ export function bothFluxesFigure(em: EmPoint, gw: SampledRadiation, names: reado
   const drawn = { unit: 'of its peak', axis: 'left', scale: 'log' } as const;
   return {
     kind: 'waveforms',
-    title: `What ${names[0]} emits in electromagnetic and ${names[1]} in gravitational waves, each over its peak`,
+    title: `Electromagnetic waves of ${names[0]} and gravitational ones of ${names[1]}, each over its peak`,
     x: { label: 'Time', unit: 'M', scale: 'linear', values: picked.map((i) => axis[i]!) },
     series: [
       { ...drawn, label: 'Gravitational', role: 'claimed', values: picked.map((i) => positive(readAt(gw.axis, waves, axis[i]!))).map((v) => (v === null ? null : v / topGw)) },

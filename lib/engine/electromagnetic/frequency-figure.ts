@@ -1,4 +1,5 @@
 import type { Figure } from '../contract/measurement';
+import { scientific } from '../findings/spelt';
 import { peakOnSamples } from '../tones/peak';
 import { hzPerOmega, type FrequencyPoint } from './frequency-point';
 import { frequencyTrack } from './tone-frequency';
@@ -26,12 +27,12 @@ export function frequencyFigure(point: FrequencyPoint, valueHz: number): Figure 
   const flat = (value: number): number[] => picked.map(() => value);
   return {
     kind: 'curve',
-    title: `Frequency of the (2,2) mode of ${completed.waveform.name} at ${point.totalMassMsun} M☉, and what a plasma of ${point.plasmaDensityCm3} electrons in a cubic centimetre lets through`,
+    title: `Frequency of the (2,2) mode of ${completed.waveform.name} at ${scientific(point.totalMassMsun)} M☉, and the cut-off of a plasma`,
     x: { label: 'Time from the peak', unit: 'M', scale: 'linear', values: picked.map((i) => axis[i]! - zero) },
     series: [
       { ...drawn, label: 'Frequency in the file', role: 'recomputed', values: picked.map((i) => (track[i] != null && track[i]! > 0 ? hz * track[i]! : null)) },
-      { ...drawn, label: 'Value', role: 'claimed', values: flat(valueHz) },
-      { ...drawn, label: 'Cut-off of the plasma', role: 'noise', values: flat(plasmaCutoffHz(point.plasmaDensityCm3)) },
+      { ...drawn, label: 'Value that was read', role: 'recomputed', values: flat(valueHz) },
+      { ...drawn, label: `Cut-off at ${scientific(point.plasmaDensityCm3)} electrons in a cm³`, role: 'noise', values: flat(plasmaCutoffHz(point.plasmaDensityCm3)) },
     ],
   };
 }

@@ -1,5 +1,6 @@
 import type { BudgetLine, Figure, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
+import { scientific } from '../findings/spelt';
 import { relativeSlip } from '../radiation/input-rounding';
 import { measureTones, type ToneRecipe } from '../tones/measure-tones';
 import { usedSettings, type UsedRow } from '../tones/used-rows';
@@ -47,7 +48,7 @@ function figureOf({ waveform, curve, peak, totalMassMsun, declared }: DiscPoint)
   const accreted = accretionErgPerS(declared);
   return {
     kind: 'curve',
-    title: `Luminosity of ${waveform.name}, brightest at ${Number(peak.t.toPrecision(6))} ${waveform.unit}, and the Eddington luminosity of ${totalMassMsun} M☉`,
+    title: `Luminosity of ${waveform.name}, brightest at ${Number(peak.t.toPrecision(6))} ${waveform.unit}, and Eddington’s of ${scientific(totalMassMsun)} M☉`,
     x: { label: 'Time', unit: waveform.unit, scale: 'linear', values: picked.map((i) => curve.axis[i]!) },
     series: [
       { ...drawn, label: 'Luminosity', role: 'recomputed', values: picked.map((i) => (curve.values[i]! > 0 ? curve.values[i]! : null)) },

@@ -1,4 +1,5 @@
 import type { Figure } from '../contract/measurement';
+import { scientific } from '../findings/spelt';
 import { interpolatePair } from '../series/local-interpolation';
 import { stretchOf, toneName } from '../tones/tone';
 import type { MirrorWindow } from './mirror-by-routes';
@@ -32,7 +33,7 @@ export function mirrorFigure(point: MirrorPoint, { from, to, shiftM, peakM }: Mi
   const drawn = { unit: '', axis: 'left', scale: 'log' } as const;
   return {
     kind: 'waveforms',
-    title: `${toneName(point)} of ${emWaveform.name} over ${Number(meanRatio.toPrecision(4))}, and of ${gwWaveform.name}`,
+    title: `Amplitudes of ${toneName(point)}: ${gwWaveform.name}, and ${emWaveform.name} over ${scientific(meanRatio, 3)}`,
     x: { label: 'Time from the peak', unit: 'M', scale: 'linear', values: picked.map((i) => shown.axis[i]! - peakM) },
     series: [
       { ...drawn, label: 'Gravitational, |ψ₄|', role: 'claimed', values: picked.map((i) => Math.hypot(shown.re[i]!, shown.im[i]!)).map((v) => (v > 0 ? v : null)) },
