@@ -1,3 +1,4 @@
+import { houseLimitObservable } from '../contract/house-values';
 import type { BudgetLine, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
 import type { Waveform } from '../contract/waveform';
@@ -49,7 +50,7 @@ function truncationLine(errorEstimate: number, { factor, why }: ReturnType<typeo
 export const measureExtrapolated =
   (scalars: Scalars, unitOfObservable: (observable: string) => string) =>
   (request: MeasureRequest, watch: Watch): Measurement => {
-    const { formalOrder, observable = 'radiated-energy' } = request.settings;
+    const { formalOrder, observable = houseLimitObservable } = request.settings;
     const spaced = spacedRuns(request, 2, '; the error is taken as three times the distance of the limit');
     if (!areRuns(spaced)) return stopped(spaced);
     const { runs, findings } = spaced;

@@ -1,3 +1,4 @@
+import { houseOrderObservable } from '../contract/house-values';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
@@ -183,7 +184,7 @@ export const measureOrder =
   (request: MeasureRequest, watch: Watch): Measurement => {
     const spaced = spacedRuns(request, 3, '');
     if (!areRuns(spaced)) return stopped(spaced);
-    const observable = request.settings.observable ?? 'dominant';
+    const observable = request.settings.observable ?? houseOrderObservable;
     const step = stepper(watch, 6);
     return isCurve(observable) ? ofCurves(spaced, observable, request, step) : ofScalars(spaced, observable, scalars, request, watch, step);
   };

@@ -1,4 +1,4 @@
-import { houseValues } from '../contract/house-values';
+import { houseLimitObservable, houseValues } from '../contract/house-values';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Measurement, UsedSetting } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
@@ -68,7 +68,7 @@ export const measureRadius =
   (scalars: Scalars, unitOfObservable: (observable: string) => string) =>
   (request: MeasureRequest, watch: Watch): Measurement => {
     const degree = request.settings.extrapolationOrder ?? houseValues.extrapolationOrder;
-    const observable = request.settings.observable ?? 'radiated-energy';
+    const observable = request.settings.observable ?? houseLimitObservable;
     const placed = placedRuns(request, degree);
     if ('code' in placed) return stopped([placed]);
     const { apart, where } = placed;

@@ -1,3 +1,4 @@
+import { houseOrderObservable } from '../contract/house-values';
 import type { Quantity } from '../contract/quantity';
 import { measureOrder } from '../extrapolation/measure-order';
 import { neededByObservable, orderWords, scalars, settingsOfWords } from './series-observables';
@@ -17,10 +18,10 @@ export const convergenceOrder: Quantity = {
   unit: '',
   roles: ['series'],
   choices: { observable: Object.keys(orderWords) },
-  follows: { setting: 'observable', houseDefault: 'dominant', words: orderWords },
+  follows: { setting: 'observable', houseDefault: houseOrderObservable, words: orderWords },
   needsNoise: false,
   settings: settingsOfWords(orderWords),
-  required: (inputs, declared) => neededByObservable(inputs, declared, 'dominant'),
+  required: (inputs, declared) => neededByObservable(inputs, declared, houseOrderObservable),
   sweepable: [],
   scale: 'absolute',
   naturalTolerance: () => 0.5,

@@ -1,3 +1,4 @@
+import { houseLimitObservable } from '../contract/house-values';
 import type { Quantity, QuantityInputs } from '../contract/quantity';
 import type { DeclaredSettings } from '../contract/settings';
 import { measureExtrapolated } from '../extrapolation/measure-extrapolated';
@@ -21,13 +22,13 @@ export const extrapolatedValue: Quantity = {
   id: 'extrapolated-value',
   title: 'Value at zero grid spacing',
   symbol: 'X_\\infty',
-  unit: unitOfObservable('radiated-energy'),
+  unit: unitOfObservable(houseLimitObservable),
   roles: ['series'],
   choices: { observable: Object.keys(words) },
-  follows: { setting: 'observable', houseDefault: 'radiated-energy', words },
+  follows: { setting: 'observable', houseDefault: houseLimitObservable, words },
   needsNoise: false,
   settings: settingsOfWords(words),
-  required: (inputs, declared) => [...(needsOrder(inputs, declared) ? (['formalOrder'] as const) : []), ...neededByObservable(inputs, declared, 'radiated-energy')],
+  required: (inputs, declared) => [...(needsOrder(inputs, declared) ? (['formalOrder'] as const) : []), ...neededByObservable(inputs, declared, houseLimitObservable)],
   sweepable: [],
   scale: 'absolute',
   naturalTolerance: toleranceOfObservable,

@@ -1,3 +1,4 @@
+import { houseLimitObservable } from '../contract/house-values';
 import type { Quantity } from '../contract/quantity';
 import { measureRadius } from '../extrapolation/measure-radius';
 import { neededByObservable, scalars, settingsOfWords, toleranceOfObservable, unitOfObservable, valueWords } from './series-observables';
@@ -16,13 +17,13 @@ export const radiusExtrapolation: Quantity = {
   id: 'radius-extrapolation',
   title: 'Value at infinite radius',
   symbol: 'X_{r\\to\\infty}',
-  unit: unitOfObservable('radiated-energy'),
+  unit: unitOfObservable(houseLimitObservable),
   roles: ['series'],
   choices: { observable: Object.keys(words) },
-  follows: { setting: 'observable', houseDefault: 'radiated-energy', words },
+  follows: { setting: 'observable', houseDefault: houseLimitObservable, words },
   needsNoise: false,
   settings: settingsOfWords(words),
-  required: (inputs, declared) => neededByObservable(inputs, declared, 'radiated-energy'),
+  required: (inputs, declared) => neededByObservable(inputs, declared, houseLimitObservable),
   sweepable: [],
   scale: 'absolute',
   naturalTolerance: toleranceOfObservable,

@@ -1,3 +1,4 @@
+import { houseLimitObservable } from '../contract/house-values';
 import type { Follows, Quantity, QuantityInputs } from '../contract/quantity';
 import type { DeclaredSettings, Observable, SettingName } from '../contract/settings';
 import { cycles } from './cycles';
@@ -34,7 +35,7 @@ export const unitOfObservable = (observable: string): string => scalars.get(obse
 
 /** That of the observable; at a peak, that of a difference of amplitudes or phases. */
 export function toleranceOfObservable(value: number, declared: DeclaredSettings | undefined): number {
-  const observable = declared?.observable ?? 'radiated-energy';
+  const observable = declared?.observable ?? houseLimitObservable;
   if (observable === 'amplitude-at-peak') return 1e-3 * Math.abs(value);
   if (observable === 'phase-at-peak') return 0.02;
   return scalars.get(observable)?.naturalTolerance(value, declared) ?? Number.NaN;
