@@ -5,6 +5,7 @@ import { curvatureOf, mirroredField } from '@/lib/engine/synthesis/electromagnet
 import { formatModesText, modeColumns, watermark } from '@/lib/engine/synthesis/modes-text';
 import { synthesise, type SynthesisRequest } from '@/lib/engine/synthesis/synthesise';
 import { binaryFacts, digits, modesFile, positive, sheet, waveform, withoutStart, type SpecimenFile } from './specimen-parts';
+import { nearlyCircular } from './specimens-of-orbits';
 import { remnantByBalance, unconvergedPhase } from './specimens-of-runs';
 
 /**
@@ -324,6 +325,7 @@ export const specimens: readonly Specimen[] = [
   { folder: 'radiated-energy', files: radiatedEnergy },
   { folder: 'ringdown-and-resolution', files: ringdownAndResolution },
   { folder: 'two-to-one', files: twoToOne },
+  { folder: 'nearly-circular', files: nearlyCircular },
   { folder: 'remnant-by-balance', files: remnantByBalance },
   { folder: 'unconverged-phase', files: unconvergedPhase },
   { folder: 'electromagnetic-twin', files: electromagneticTwin },

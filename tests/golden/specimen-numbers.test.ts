@@ -173,3 +173,22 @@ describe('a remnant known at three resolutions and four radii', () => {
     expect(values('C5')[0]).toAgreeWith(0.0289662518253, { relative: 1e-6 });
   });
 });
+
+/** Required: an independent numpy script (cubic splines, five-sample parabola, Chebyshev fit) over the same file; the swing by construction; fits from appendix A of the design study. */
+describe('a nearly circular inspiral and what it should leave', () => {
+  beforeAll(async () => void (claims = await runFolder(folder('nearly-circular'))), 120_000);
+  it('recomputes an eccentricity of 0.00472, of the 0.005 put in, and 18.11 cycles', () => {
+    expect(values('C1')[0]).toAgreeWith(0.00472327, { relative: 1e-6 });
+    expect(values('C1')[0]).toAgreeWith(0.005, { relative: 0.2 });
+    expect(claims.get('C1')?.points[0]?.components?.referenceFrequency).toAgreeWith(0.0223843665, { relative: 1e-6 });
+    expect(values('C2')[0]).toAgreeWith(18.1086, claims.get('C2')!.points[0]!.expandedUncertainty!);
+  });
+  it('reads the fits of the check table', () => {
+    expect(values('C3')[0]).toAgreeWith((0.95176 + 0.95151 + 0.95161 + 0.95158) / 4, 1e-5);
+    expect(values('C4')[0]).toAgreeWith(0.68642, 1e-5);
+    expect(values('C5')[0]).toAgreeWith(156.7, 0.06);
+  });
+  it('agrees throughout', () => {
+    expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees', 'agrees', 'agrees', 'agrees', 'agrees']);
+  });
+});

@@ -34,26 +34,31 @@ const MARGIN = 16;
 /**
  * Route A: ω by differences at the samples, its least-squares polynomial in continuous time by projection
  * on Legendre polynomials.
- * Shape:  samples of the stretch and some beyond, which weigh nothing.
+ * Shape:  samples of the stretch and the next one beyond either edge.
  * Units:  times in M; rad/M, > 0 where the mode turns as the house has it or the other way.
  * Error:  of the stencil and of the end weights.
  * Fails:  not finite where the series vanishes.
  * Source: Q29; settings.md section 5 (`eccentricity`).
  */
 export function smoothedOnSamples(whole: Tone, { from, to }: Stretch, { stencil, order }: SampleRule = houseRule): SmoothedFrequency & { readonly noiseGain: Float64Array } {
-  const { axis, re, im, isEven } = stretchOf(whole, from, to, MARGIN);
-  const { slopes, noiseGain } = derivativesAtSamples(axis, [re, im], stencil, isEven);
+  const near = stretchOf(whole, from, to, MARGIN);
+  const { slopes, noiseGain: gain } = derivativesAtSamples(near.axis, [near.re, near.im], stencil, near.isEven);
   const [dre, dim] = slopes as [Float64Array, Float64Array];
-  const turning = axis.map((_, i) => (im[i]! * dre[i]! - re[i]! * dim[i]!) / (re[i]! ** 2 + im[i]! ** 2));
-  const after = quadratureWeights(axis, to, order, isEven);
-  const w = quadratureWeights(axis, from, order, isEven).map((x, i) => x - after[i]!);
+  // The sums take no sample further out than the next: there the polynomial runs away.
+  const first = Math.max(0, near.axis.findIndex((t) => t > from) - 1);
+  const last = near.axis.findLastIndex((t) => t < to) + 2;
+  const cut = (values: Float64Array): Float64Array => values.subarray(first, last);
+  const turning = cut(near.axis.map((_, i) => (near.im[i]! * dre[i]! - near.re[i]! * dim[i]!) / (near.re[i]! ** 2 + near.im[i]! ** 2)));
+  const [axis, noiseGain] = [cut(near.axis), cut(gain)];
+  const after = quadratureWeights(axis, to, order, near.isEven);
+  const w = quadratureWeights(axis, from, order, near.isEven).map((x, i) => x - after[i]!);
   const sense = Math.sign(turning.reduce((sum, x, i) => sum + w[i]! * x, 0));
   const omega = turning.map((x) => sense * x);
   const half = (to - from) / 2;
   const basis = Array.from(axis, (t) => legendre((t - from) / half - 1));
   const shares = Array.from({ length: DEGREE + 1 }, (_, k) => ((2 * k + 1) / (2 * half)) * omega.reduce((sum, x, i) => (w[i] === 0 ? sum : sum + w[i]! * x * basis[i]![k]!), 0));
   const fit = axis.map((_, i) => shares.reduce((sum, c, k) => sum + c * basis[i]![k]!, 0));
-  const atStart = interpolatePair({ axis, first: omega, second: re }, { t0: from, dt: 1, n: 1 }, 8)[0][0]!;
+  const atStart = interpolatePair({ axis, first: omega, second: noiseGain }, { t0: from, dt: 1, n: 1 }, 8)[0][0]!;
   return { t: axis, w, omega, fit, atStart, noiseGain };
 }
 
