@@ -14,6 +14,7 @@ export const PAGE_DOORS = {
   'page /methods/conventions': ['anyone'],
   'page /methods/noise': ['anyone'],
   'page /methods/findings': ['anyone'],
+  'page /methods/budget': ['anyone'],
   'page /interface': ['anyone'],
   'page /problems/{code}': ['anyone'],
   'page /sign-in': ['anyone'],

@@ -1,3 +1,4 @@
+import { houseMatchThreshold, houseValues } from '../contract/house-values';
 import type { KnownTo, MetricBound } from '../contract/metric-bound';
 import type { MeasureRequest, QuantityInputs } from '../contract/quantity';
 import type { DeclaredSettings, MaximiseOver } from '../contract/settings';
@@ -29,7 +30,7 @@ interface Likeness {
   readonly complex?: true;
 }
 
-const parametersOf = ({ parameters = 1 }: DeclaredSettings): number => parameters;
+const parametersOf = ({ parameters }: DeclaredSettings): number => parameters ?? houseValues.parameters;
 const ofMatch = { mismatchOf: (value: number) => 1 - value, valueOf: (mismatch: number) => 1 - mismatch };
 const shifts: readonly MaximiseOver[] = ['time', 'phase'];
 const rotations: readonly MaximiseOver[] = ['time', 'polarisation', 'phase'];
@@ -117,7 +118,7 @@ function fractionBound({ rerun, request, index }: BoundContext, known: readonly 
   };
   const slack = worst(known.filter(({ waveform }) => signals.has(waveform))) + worst(known.filter(({ waveform }) => !signals.has(waveform)));
   const { over, settings } = request;
-  const threshold = over?.setting === 'threshold' ? over.values[index]! : (settings.threshold ?? 0.965);
+  const threshold = over?.setting === 'threshold' ? over.values[index]! : (settings.threshold ?? houseMatchThreshold);
   const at = mismatchBound(1 - threshold, [slack * slack]);
   const asked = (match: number): number | null => (over?.setting === 'threshold' ? rerun({ swept: match }) : rerun({ settings: { threshold: match } }));
   const [low, high] = [asked(1 - at.low), asked(1 - at.high)];
