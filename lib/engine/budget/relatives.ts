@@ -9,7 +9,14 @@ export type Kind = 'resolution' | 'radius';
 
 const placeOf = (kind: Kind, waveform: Waveform): number | null => (kind === 'resolution' ? (waveform.resolution ?? null) : areal(waveform));
 
-/** Runs of a waveform's simulation that differ from it in this one thing, as far as the sheet says. */
+/**
+ * Runs of a waveform's simulation that differ from it in this one thing, as far as the sheet says.
+ * Shape:  in the order of the sheet.
+ * Units:  none.
+ * Error:  none.
+ * Fails:  never; none where the sheet gives no resolution or radius.
+ * Source: the sheet's \`series\`, \`resolution\` and \`extractionRadiusM\`.
+ */
 export function relativesOf(kind: Kind, waveform: Waveform, inputs: QuantityInputs): Waveform[] {
   const other: Kind = kind === 'resolution' ? 'radius' : 'resolution';
   const own = placeOf(kind, waveform);
