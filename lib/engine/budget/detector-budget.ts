@@ -1,5 +1,4 @@
-import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
-import type { DetectorTraits, PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import { waveformsIn, type DetectorTraits, type PointRequest } from '@/lib/engine/conditioning/detector-settings';
 import { massFrameOf } from '@/lib/engine/conditioning/detector-settings';
 import type { BudgetLine } from '@/lib/engine/contract/measurement';
 import type { DeclaredSettings } from '@/lib/engine/contract/settings';
@@ -23,7 +22,7 @@ export interface BudgetContext {
   readonly store: SpectrumStore;
 }
 
-const waveformsOf = (request: PointRequest): ConditionedWaveform[] => [request.a, ...(request.b ? [request.b] : [])];
+const waveformsOf = waveformsIn;
 
 /** How far the value moves when one thing is changed; NaN where the change leaves nothing to compute. */
 function movedBy(context: BudgetContext, change: Partial<PointRequest>): number {
@@ -40,7 +39,7 @@ const largest = (moves: readonly number[]): number | null =>
 
 function computationLines({ error, request }: BudgetContext): BudgetLine[] {
   const digits = waveformsOf(request).map((c) => c.given.significantDigits);
-  const printed = digits.map((d) => (d === null ? 'binary' : `${d} digits`)).join(' and ');
+  const printed = [...new Set(digits.map((d) => (d === null ? 'binary' : `${d} digits`)))].join(' and ');
   return [
     {
       component: 'Quadrature and transform',
@@ -232,7 +231,14 @@ function parameterLine(context: BudgetContext): BudgetLine[] {
  * Fails:  never.
  * Source: domain reference section 5.1; settings.md rule 12.
  */
-export const detectorBudget = (context: BudgetContext): BudgetLine[] => [
+export function detectorBudget(context: BudgetContext): BudgetLine[] {
+  const own = context.recipe.ownBudget?.({ request: context.request, found: context.found, movedBy: (settings) => movedBy(context, withSettings(context, settings)), movedIn: (request) => movedBy(context, request) }) ?? [];
+  // What a quantity estimates by itself takes the place of what is unknown in general.
+  const common = commonLines(context).filter(({ id }) => !own.some((line) => line.id === id));
+  return [...common, ...own];
+}
+
+const commonLines = (context: BudgetContext): BudgetLine[] => [
   ...computationLines(context),
   taperLine(context),
   noiseLine(context),
@@ -240,5 +246,4 @@ export const detectorBudget = (context: BudgetContext): BudgetLine[] => [
   ...modesLine(context),
   ...cosmologyLine(context),
   ...parameterLine(context),
-  ...(context.recipe.ownBudget?.({ request: context.request, found: context.found, movedBy: (settings) => movedBy(context, withSettings(context, settings)) }) ?? []),
 ];

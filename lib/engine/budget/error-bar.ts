@@ -2,7 +2,7 @@
  * Budget: how far a number can be trusted. The computation's own part comes from turning each knob
  * of route A; what was chosen, or cannot be known from the files, stands beside it and never in U.
  */
-import type { PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import { waveformsIn, withEach, type PointRequest } from '@/lib/engine/conditioning/detector-settings';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import type { Evaluated, Recipe, RouteKit } from '@/lib/engine/quantities/detector/recipe';
@@ -71,7 +71,7 @@ function printedShorter(c: ConditionedWaveform): ConditionedWaveform {
 }
 
 export const isPrinted = (request: PointRequest): boolean =>
-  [request.a, request.b].some((c) => c !== null && c.given.significantDigits !== null && c.given.significantDigits < DOUBLE_DIGITS);
+  waveformsIn(request).some(({ given: { significantDigits: digits } }) => digits !== null && digits < DOUBLE_DIGITS);
 
 /**
  * The computation's own error at one point: each knob turned once, the changes added up.
@@ -93,7 +93,7 @@ export function computationError(recipe: Recipe, request: PointRequest, found: E
     if (by > largest.by) largest = { name, by };
   }
   quadrature = Math.max(quadrature, recipe.floor(found.value));
-  const shorter = { ...request, a: printedShorter(request.a), b: request.b === null ? null : printedShorter(request.b) };
+  const shorter = withEach(request, printedShorter);
   const rounding = isPrinted(request) ? Math.abs(recipe.again(kitOf(houseNumerics, store), shorter, found) - base) / 10 : 0;
   return { quadrature, rounding, largestKnob: largest.name, expanded: expandedOf([standardOf(quadrature), standardOf(rounding)]) };
 }

@@ -49,6 +49,9 @@ export interface DetectorPoint {
   readonly templateMassRange: readonly [number, number];
   readonly a: Side;
   readonly b: Side | null;
+  /** Of quantities that take lists; else empty. */
+  readonly signals: readonly Side[];
+  readonly templates: readonly Side[];
 }
 
 /** Stands in where a distance cancels. */
@@ -84,8 +87,30 @@ export interface PointRequest {
   readonly at: Readonly<Record<string, number>>;
   readonly a: ConditionedWaveform;
   readonly b: ConditionedWaveform | null;
+  /** Lists, for quantities that take them; `a` is then the first of the signals. */
+  readonly signals?: readonly ConditionedWaveform[];
+  readonly templates?: readonly ConditionedWaveform[];
   readonly noise: NoiseCurve;
   readonly traits: DetectorTraits;
+}
+
+/** Every waveform of a request, each once. */
+export const waveformsIn = ({ a, b, signals = [], templates = [] }: PointRequest): ConditionedWaveform[] => [...new Set([a, ...(b === null ? [] : [b]), ...signals, ...templates])];
+
+/** The request with another waveform in the place of each. */
+export const withEach = (request: PointRequest, by: (c: ConditionedWaveform) => ConditionedWaveform): PointRequest => ({
+  ...request,
+  a: by(request.a),
+  b: request.b === null ? null : by(request.b),
+  ...(request.signals === undefined ? {} : { signals: request.signals.map(by) }),
+  ...(request.templates === undefined ? {} : { templates: request.templates.map(by) }),
+});
+
+/** The side by which a waveform of the request enters a point. */
+export function sideIn(point: DetectorPoint, { a, b, signals = [], templates = [] }: PointRequest, c: ConditionedWaveform): Side {
+  if (c === a) return point.a;
+  if (c === b && point.b !== null) return point.b;
+  return point.signals[signals.indexOf(c)] ?? point.templates[templates.indexOf(c)] ?? point.a;
 }
 
 interface Scale {
@@ -95,8 +120,9 @@ interface Scale {
   readonly distanceMpc: number | null;
 }
 
-function scaleOf({ declared, a, b, traits }: PointRequest): Scale {
-  const waveforms = [a.given, ...(b ? [b.given] : [])];
+function scaleOf(request: PointRequest): Scale {
+  const { declared, a, traits } = request;
+  const waveforms = waveformsIn(request).map(({ given }) => given);
   const cosmology = declared.cosmology ?? houseValues.cosmology;
   const massMsun = declared.totalMassMsun ?? null;
   const massFrame = massFrameOf(declared, waveforms, traits);
@@ -140,9 +166,9 @@ export const detectorPoint = (request: PointRequest): DetectorPoint => assemble(
 
 function assemble(request: PointRequest, scale: Scale): DetectorPoint {
   const { declared, at, noise, traits } = request;
-  const a = sideOf(request.a, declared, scale);
-  const b = request.b === null ? null : sideOf(request.b, declared, scale);
-  const sides = b === null ? [a] : [a, b];
+  const made = new Map(waveformsIn(request).map((c) => [c, sideOf(c, declared, scale)] as const));
+  const side = (c: ConditionedWaveform): Side => made.get(c)!;
+  const sides = [...made.values()];
   return {
     at,
     declared,
@@ -156,8 +182,10 @@ function assemble(request: PointRequest, scale: Scale): DetectorPoint {
     threshold: declared.threshold ?? houseValues.threshold,
     cosmology: declared.cosmology ?? houseValues.cosmology,
     templateMassRange: declared.templateMassRange ?? houseValues.templateMassRange,
-    a,
-    b,
+    a: side(request.a),
+    b: request.b === null ? null : side(request.b),
+    signals: (request.signals ?? []).map(side),
+    templates: (request.templates ?? []).map(side),
   };
 }
 

@@ -4,6 +4,7 @@ import { convergenceOrder } from './convergence-order';
 import { cycles } from './cycles';
 import { degeneracy } from './degeneracy';
 import { discLuminosity } from './disc-luminosity';
+import { detectableFraction } from './detectable-fraction';
 import { distinguishabilitySnr } from './distinguishability-snr';
 import { eccentricity } from './eccentricity';
 import { extrapolatedValue } from './extrapolated-value';
@@ -12,6 +13,7 @@ import { emFrequency } from './em-frequency';
 import { emMirroring } from './em-mirroring';
 import { emRatio } from './em-ratio';
 import { fieldExponent } from './field-exponent';
+import { fittingFactor } from './fitting-factor';
 import { horizonDistance } from './horizon-distance';
 import { horizonRedshift } from './horizon-redshift';
 import { hybridSnr } from './hybrid-snr';
@@ -36,5 +38,5 @@ import { volumeRatio } from './volume-ratio';
 
 /** The one table of what can be claimed; a quantity that is not in it is refused by name. */
 export const quantities: ReadonlyMap<string, Quantity> = new Map(
-  [overlap, match, mismatch, distinguishabilitySnr, degeneracy, snr, snrRatio, volumeRatio, horizonDistance, horizonRedshift, modeContent, hybridSnr, radiatedEnergy, radiatedAngularMomentum, peakLuminosity, recoil, remnantMass, remnantSpin, remnantFit, ringdownFrequency, ringdownDamping, cycles, eccentricity, phaseDifference, amplitudeDifference, convergenceOrder, extrapolatedValue, radiusExtrapolation, emEnergy, emRatio, fieldExponent, emFrequency, emMirroring, discLuminosity].map((quantity) => [quantity.id, quantity]),
+  [overlap, match, mismatch, distinguishabilitySnr, fittingFactor, detectableFraction, degeneracy, snr, snrRatio, volumeRatio, horizonDistance, horizonRedshift, modeContent, hybridSnr, radiatedEnergy, radiatedAngularMomentum, peakLuminosity, recoil, remnantMass, remnantSpin, remnantFit, ringdownFrequency, ringdownDamping, cycles, eccentricity, phaseDifference, amplitudeDifference, convergenceOrder, extrapolatedValue, radiusExtrapolation, emEnergy, emRatio, fieldExponent, emFrequency, emMirroring, discLuminosity].map((quantity) => [quantity.id, quantity]),
 );

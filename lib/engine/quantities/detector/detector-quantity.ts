@@ -12,7 +12,8 @@ export const detectorQuantity = (described: Described, recipe: Recipe): Quantity
   needsNoise: true,
   scale: 'absolute',
   required: (inputs, declared, over) => {
-    const waveforms = [inputs.of.a, inputs.of.b].filter((w) => w !== undefined);
+    const { a, b, signals = [], templates = [] } = inputs.of;
+    const waveforms = [a, b, ...signals, ...templates].filter((w) => w !== undefined);
     const has = (name: SettingName): boolean => declared[name] !== undefined || over === name;
     const own = recipe.requires?.(waveforms, has) ?? [];
     return [...new Set([...requiredSettings(waveforms, declared, over, recipe.traits(declared)), ...own])];

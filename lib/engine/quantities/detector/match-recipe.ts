@@ -6,7 +6,7 @@ import { powerInResponse } from './loudness';
 import { ROUNDING_FLOOR, type Evaluated, type Recipe } from './recipe';
 
 /** A heavier template is longer and, at the same distance, stronger. */
-const rescale = (b: Side, factor: number): Side => ({
+export const rescale = (b: Side, factor: number): Side => ({
   ...b,
   secondsPerUnit: b.secondsPerUnit * factor,
   strainPerUnit: b.strainPerUnit * factor,
@@ -23,7 +23,7 @@ export const matchRequest = (point: DetectorPoint): MatchRequest => ({
 });
 
 /** b put where the search left it, so that a rerun only moves it in time and turns it. */
-function settled(request: MatchRequest, at: MatchOutcome): MatchRequest {
+export function settled(request: MatchRequest, at: MatchOutcome): MatchRequest {
   const searched: MaximiseOver[] = [];
   let { b } = request;
   if (at.massFactor !== undefined) {
@@ -41,15 +41,15 @@ function settled(request: MatchRequest, at: MatchOutcome): MatchRequest {
   return { ...request, b, maximise: request.maximise.filter((what) => !searched.includes(what)) };
 }
 
-const boundRemark = (outcome: MatchOutcome, word: string): { remarks?: readonly string[] } => (outcome.onBound ? { remarks: [word] } : {});
+export const boundRemark = (outcome: MatchOutcome, word: string): { remarks?: readonly string[] } => (outcome.onBound ? { remarks: [word] } : {});
 
-const placement = (point: DetectorPoint, outcome: MatchOutcome): Record<string, number> => ({
+export const placement = (point: DetectorPoint, outcome: MatchOutcome): Record<string, number> => ({
   ...(outcome.polarisationRad === undefined ? {} : { polarisationRad: outcome.polarisationRad }),
   ...(outcome.inclinationRad === undefined ? {} : { inclinationRad: outcome.inclinationRad }),
   ...(outcome.massFactor === undefined || point.massMsun === null ? {} : { templateMassMsun: point.massMsun * outcome.massFactor }),
 });
 
-const traits = () => ({ maximise: houseValues.maximise, loudness: false, absolute: false, needsDistance: false, horizon: false }) as const;
+export const pairTraits = () => ({ maximise: houseValues.maximise, loudness: false, absolute: false, needsDistance: false, horizon: false }) as const;
 
 /** Builds a recipe on one maximised product; `read` takes the value and components from its outcome. */
 function recipeOf(
@@ -58,7 +58,7 @@ function recipeOf(
   floor: Recipe['floor'],
 ): Recipe {
   return {
-    traits,
+    traits: pairTraits,
     evaluate: ({ route }, request) => {
       const point = detectorPoint(request);
       const outcome = route.match(matchRequest(point));
@@ -119,7 +119,7 @@ export const distinguishabilityRecipe: Recipe = recipeOf(
 );
 
 export const overlapRecipe: Recipe = {
-  traits: () => ({ ...traits(), maximise: null }),
+  traits: () => ({ ...pairTraits(), maximise: null }),
   evaluate: ({ route }, request) => {
     const { a, b, band, response } = detectorPoint(request);
     return { value: route.overlap(a, b ?? a, band, response) };

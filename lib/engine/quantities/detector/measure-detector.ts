@@ -1,11 +1,12 @@
 import { errorBarIndices, fromNeighbours, routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
 import { detectorBudget } from '@/lib/engine/budget/detector-budget';
 import { computationError, kitOf, type ComputationError } from '@/lib/engine/budget/error-bar';
-import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
-import type { DetectorPoint, PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import { conditionWaveform, type ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
+import { waveformsIn, type DetectorPoint, type PointRequest } from '@/lib/engine/conditioning/detector-settings';
 import type { MeasuredPoint, Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled, notComputable, type MeasureRequest, type Quantity, type Watch } from '@/lib/engine/contract/quantity';
 import type { SettingName } from '@/lib/engine/contract/settings';
+import type { Waveform } from '@/lib/engine/contract/waveform';
 import { startsInBand } from '@/lib/engine/findings/detector-findings';
 import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
@@ -34,14 +35,24 @@ export interface Walk {
 const pointsOf = ({ over }: MeasureRequest): Readonly<Record<string, number>>[] =>
   over === null ? [{}] : over.values.map((value) => ({ [over.setting]: value }));
 
+/** Of a list of signals the first stands where one waveform is asked for. */
+const firstOf = ({ inputs: { of } }: MeasureRequest): Waveform | undefined => of.a ?? of.signals?.[0];
+
 function requestsOf(quantity: DetectorQuantity, request: MeasureRequest): PointRequest[] {
   const { settings, inputs } = request;
-  const modes = settings.modes ?? 'all';
-  const a = conditionWaveform(inputs.of.a!, modes);
-  const b = inputs.of.b === undefined ? null : inputs.of.b === inputs.of.a ? a : conditionWaveform(inputs.of.b, modes);
+  const made = new Map<Waveform, ConditionedWaveform>();
+  const condition = (given: Waveform): ConditionedWaveform => {
+    const known = made.get(given) ?? conditionWaveform(given, settings.modes ?? 'all');
+    made.set(given, known);
+    return known;
+  };
+  const { b: second, signals, templates } = inputs.of;
+  const a = condition(firstOf(request)!);
+  const b = second === undefined ? null : condition(second);
+  const lists = { ...(signals === undefined ? {} : { signals: signals.map(condition) }), ...(templates === undefined ? {} : { templates: templates.map(condition) }) };
   return pointsOf(request).map((at) => {
     const declared = { ...settings, ...at };
-    return { declared, at, a, b, noise: inputs.noise!, traits: quantity.recipe.traits(declared) };
+    return { declared, at, a, b, ...lists, noise: inputs.noise!, traits: quantity.recipe.traits(declared) };
   });
 }
 
@@ -61,8 +72,9 @@ function evaluateAt(
 ): Map<number, Evaluated> {
   const found = new Map<number, Evaluated>();
   indices.forEach((i, k) => {
-    step(watch, span[0] + ((span[1] - span[0]) * k) / indices.length, doing);
-    found.set(i, walk.quantity.recipe.evaluate(kit, walk.requests[i]!));
+    const onStep = (share: number): void => step(watch, span[0] + ((span[1] - span[0]) * (k + share)) / indices.length, doing);
+    onStep(0);
+    found.set(i, walk.quantity.recipe.evaluate({ ...kit, onStep }, walk.requests[i]!));
   });
   return found;
 }
@@ -87,7 +99,7 @@ function remarksOf(walk: Walk, found: Evaluated, shown: DetectorPoint): string[]
  */
 export function measureDetector(quantity: DetectorQuantity, request: MeasureRequest, watch: Watch): Measurement {
   const ats = pointsOf(request);
-  if (request.inputs.of.a === undefined || request.inputs.noise === null) return notComputable([], ats);
+  if (firstOf(request) === undefined || request.inputs.noise === null) return notComputable([], ats);
   step(watch, 0, 'preparing the waveforms');
   const requests = requestsOf(quantity, request);
   const store = new SpectrumStore();
@@ -153,6 +165,6 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
 }
 
 function settingsContext({ quantity, request, requests }: Walk, shown: readonly DetectorPoint[]): SettingsContext {
-  const { a, b, traits } = requests[0]!;
-  return { points: shown, waveforms: [a, ...(b && b !== a ? [b] : [])], traits, allowed: quantity.settings, swept: request.over?.setting ?? null };
+  const { traits } = requests[0]!;
+  return { points: shown, waveforms: waveformsIn(requests[0]!), traits, allowed: quantity.settings, swept: request.over?.setting ?? null };
 }

@@ -8,12 +8,15 @@ import type { Finding } from '@/lib/engine/contract/finding';
 import type { DetectorRoute, MatchOutcome, Sight, SightMatch } from '@/lib/engine/contract/route';
 import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settings';
 import type { Waveform } from '@/lib/engine/contract/waveform';
+import type { FractionFound } from '@/lib/engine/fraction/fraction-found';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 
 /** A route, and the same route allowed to be cruder while it only looks for a bracket. */
 export interface RouteKit {
   readonly route: DetectorRoute;
   readonly scan: DetectorRoute;
+  /** Asked during long work with the share that is done; throws to stop. */
+  readonly onStep?: (share: number) => void;
 }
 
 export interface Evaluated {
@@ -29,6 +32,10 @@ export interface Evaluated {
   readonly roots?: readonly number[];
   /** Lines of sight that make the value, with their shares, and where b was left for each. */
   readonly sights?: readonly { readonly sight: Sight; readonly share: number; readonly match: SightMatch }[];
+  /** Place in the list of the template that fits best. */
+  readonly bestTemplate?: number;
+  /** What a fraction was read off. */
+  readonly fraction?: FractionFound;
   /** Half-width of what a search or a mean leaves open, beside the route's own error. */
   readonly doubt?: number;
 }
@@ -38,6 +45,8 @@ export interface OwnBudget {
   readonly request: PointRequest;
   readonly found: Evaluated;
   readonly movedBy: (settings: DeclaredSettings) => number;
+  /** The same under another request, such as shorter records. */
+  readonly movedIn: (change: Partial<PointRequest>) => number;
 }
 
 /** What the recipe's own figures are drawn from. */

@@ -1,5 +1,5 @@
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
-import { canRescale, detectorPoint, type DetectorPoint, type PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import { canRescale, detectorPoint, sideIn, waveformsIn, type DetectorPoint, type PointRequest } from '@/lib/engine/conditioning/detector-settings';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { MeasureRequest } from '@/lib/engine/contract/quantity';
 import type { Side } from '@/lib/engine/contract/route';
@@ -12,7 +12,7 @@ import { powerInResponse } from './loudness';
 import type { DetectorQuantity, Walk } from './measure-detector';
 import type { Evaluated } from './recipe';
 
-const roleWaveforms = ({ a, b }: PointRequest): ConditionedWaveform[] => (b === null || b === a ? [a] : [a, b]);
+const roleWaveforms = waveformsIn;
 
 const harmonicSize =
   (side: Side) =>
@@ -104,7 +104,8 @@ function maximiseStops(point: DetectorPoint, request: PointRequest): (Finding | 
   const { maximise, response } = point;
   const lacking = roleWaveforms(request).find((c) => c.given.content.kind !== 'modes');
   const turned = maximise.includes('polarisation') && response !== 'complex';
-  const inclined = maximise.includes('inclination') && request.b !== null && request.b.given.content.kind !== 'modes';
+  const moved = [...(request.b === null ? [] : [request.b]), ...(request.templates ?? [])];
+  const inclined = maximise.includes('inclination') && moved.some(({ given }) => given.content.kind !== 'modes');
   return [
     turned
       ? stop(
@@ -129,7 +130,7 @@ function pointStops(quantity: DetectorQuantity, request: PointRequest, store: Sp
   const point = detectorPoint(request);
   const { band } = point;
   const c = roleWaveforms(request);
-  const sides = [point.a, ...(point.b === null ? [] : [point.b])];
+  const sides = c.map((waveform) => sideIn(point, request, waveform));
   const anywhere = request.traits.goesOver?.inclination === true && request.declared.inclinationRad === undefined;
   const allSky = point.average === 'sky-orientation' || point.average === 'volume' || anywhere;
   const empty =
@@ -147,7 +148,7 @@ function pointStops(quantity: DetectorQuantity, request: PointRequest, store: Sp
     ...maximiseStops(point, request),
     ...shortStops(request),
     apartStop(point),
-    tooManyLines(point, !request.traits.loudness, store),
+    ...[point.b, ...point.templates].map((b) => tooManyLines({ ...point, b }, !request.traits.loudness, store)),
     request.traits.horizon ? null : empty,
     ...(quantity.recipe.stops?.(request) ?? []),
     ...c.map((waveform, i) => look.nothingSeen(waveform, sides[i] ?? sides[0]!, harmonicSize(sides[i] ?? sides[0]!), allSky)),
@@ -189,12 +190,18 @@ export function valueStops(_quantity: DetectorQuantity, walk: Walk, found: reado
   return distinct(stops.length > 0 ? stops.slice(0, 1) : blindResponse(walk));
 }
 
+/** Of waveforms with the same modes one speaks for all: a response that sees none of it is a matter of the harmonics. */
+function apartInModes(waveforms: readonly ConditionedWaveform[]): ConditionedWaveform[] {
+  const key = ({ given: { name, content } }: ConditionedWaveform): string => (content.kind === 'modes' ? content.modes.map(({ l, m }) => `${l},${m}`).join(' ') : name);
+  return [...new Map(waveforms.map((c) => [key(c), c] as const)).values()];
+}
+
 /** For example the cross polarisation of an edge-on binary: what is left are the last digits of the harmonics. */
 function blindResponse({ requests, kitA }: Walk): Finding[] {
   const request = requests[0]!;
   const point = detectorPoint(request);
   if (point.response === 'complex' || point.average !== 'optimal') return [];
-  return [point.a, ...(point.b === null ? [] : [point.b])].flatMap((side) => {
+  return apartInModes(waveformsIn(request)).map((c) => sideIn(point, request, c)).flatMap((side) => {
     const gram = kitA.route.gram(side, point.band);
     const sees = powerInResponse(gram, point.response);
     if (sees > NOTHING * (gram.plusPlus + gram.crossCross)) return [];
@@ -214,8 +221,7 @@ export function findingsOf(quantity: DetectorQuantity, requests: readonly PointR
   const first = requests[0]!;
   const level = first.traits.loudness ? 'worth-a-look' : 'needs-answer';
   const perWaveform = roleWaveforms(first).flatMap((c) => {
-    const isA = c === first.a;
-    const affected = points.map((point) => ({ point, side: isA ? point.a : (point.b ?? point.a) }));
+    const affected = points.map((point, i) => ({ point, side: sideIn(point, requests[i]!, c) }));
     return [
       look.negativeMAssumed(c),
       look.modesMissing(c),

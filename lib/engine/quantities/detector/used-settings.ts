@@ -1,4 +1,4 @@
-import { houseValues } from '@/lib/engine/contract/house-values';
+import { houseMatchThreshold, houseValues } from '@/lib/engine/contract/house-values';
 import { massMatters, type DetectorPoint, type DetectorTraits } from '@/lib/engine/conditioning/detector-settings';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import type { UsedSetting } from '@/lib/engine/contract/measurement';
@@ -47,6 +47,7 @@ function rowsOf(context: SettingsContext): Row[] {
   const fromDistance = source && !traits.horizon && declared.redshift === undefined;
   const toDistance = traits.needsDistance && !traits.horizon && declared.distanceMpc === undefined && declared.redshift !== undefined;
   const expands = fromDistance || toDistance || (traits.horizon && source);
+  const weighs = context.allowed.includes('weight');
   const searchesMass = point.maximise.includes('templateMass');
   return [
     { name: 'totalMassMsun', value: (p) => p.massMsun, unit: 'M☉', used: point.massMsun !== null, matters: false },
@@ -77,7 +78,10 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'detectors', value: (p) => p.detectors, used: traits.absolute, matters: true },
     { name: 'armAngleDeg', value: (p) => p.armAngleDeg, unit: '°', used: traits.absolute, matters: true },
     { name: 'taper', value: (p) => p.declared.taper ?? houseValues.taper, used: given.some((w) => w.domain === 'time'), matters: open },
-    { name: 'threshold', value: (p) => p.threshold, used: traits.horizon, matters: true },
+    weighs
+      ? { name: 'threshold', value: (p) => p.declared.threshold ?? houseMatchThreshold, used: true, matters: true }
+      : { name: 'threshold', value: (p) => p.threshold, used: traits.horizon, matters: true },
+    { name: 'weight', value: (p) => p.declared.weight ?? houseValues.weight, used: weighs, matters: true },
     { name: 'cosmology', value: (p) => p.cosmology, unit: 'h0 in km/s/Mpc', used: expands, matters: true },
     { name: 'parameters', value: (p) => p.declared.parameters ?? houseValues.parameters, used: context.allowed.includes('parameters'), matters: true },
     { name: 'rateLaw', value: (p) => p.declared.rateLaw ?? houseValues.rateLaw, used: context.allowed.includes('rateLaw'), matters: true },

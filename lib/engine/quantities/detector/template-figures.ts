@@ -1,0 +1,94 @@
+import type { DetectorPoint } from '@/lib/engine/conditioning/detector-settings';
+import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
+import type { DetectorRoute } from '@/lib/engine/contract/route';
+import type { FractionFound } from '@/lib/engine/fraction/fraction-found';
+import { matchRequest, settled } from './match-recipe';
+import type { Evaluated } from './recipe';
+
+const MASSES = 81;
+const SPINS = 181;
+
+const line = (label: string, role: FigureSeries['role'], values: readonly (number | null)[]): FigureSeries => ({ label, unit: '', role, axis: 'left', scale: 'linear', values });
+
+/**
+ * The match with the best template over its mass, everything else free as in the claim.
+ * Shape:  81 masses spaced evenly in their logarithm, and the best one; none where the mass is not searched.
+ * Units:  M☉, or factors where the files' own masses are used.
+ * Error:  for the eye only.
+ * Fails:  never.
+ * Source: Q04.
+ */
+export function massFigure(route: DetectorRoute, point: DetectorPoint, { outcome }: Evaluated): Figure[] {
+  const { b, templateMassRange: [low, high], massMsun } = point;
+  if (b === null || outcome?.massFactor === undefined) return [];
+  const even = Array.from({ length: MASSES }, (_, i) => low * (high / low) ** (i / (MASSES - 1)));
+  const factors = [...new Set([...even, outcome.massFactor])].sort((p, q) => p - q);
+  const asked = matchRequest(point);
+  const values = factors.map((massFactor) => {
+    const there = settled({ ...asked, b }, { ...outcome, massFactor });
+    return route.match(there).match;
+  });
+  const unit = massMsun ?? 1;
+  return [
+    {
+      kind: 'curve',
+      title: `Match with ${b.waveform.name} over the mass of the template`,
+      at: point.at,
+      x: { label: 'mass of the template', unit: massMsun === null ? '× its own' : 'M☉', scale: 'log', values: factors.map((x) => x * unit) },
+      series: [line('best over time and phase', 'recomputed', values), line('fitting factor', 'band-high', factors.map((x) => (x === outcome.massFactor ? outcome.match : null)))],
+    },
+  ];
+}
+
+const evenly = (low: number, high: number): number[] => Array.from({ length: SPINS }, (_, i) => (i === SPINS - 1 ? high : low + ((high - low) * i) / (SPINS - 1)));
+
+/**
+ * The best match over effective spin with the threshold, and the plane of the two spins with the part that is above it.
+ * Shape:  181 spins and the sampled ones; the plane shows the outermost edges.
+ * Units:  dimensionless.
+ * Error:  for the eye only.
+ * Fails:  never.
+ * Source: Q05.
+ */
+export function fractionFigures(at: Figure['at'], found: FractionFound, matchAt: (spin: number) => number, threshold: number, masses: readonly [number, number]): Figure[] {
+  const { samples, area } = found;
+  const spins = samples.map(({ spin }) => spin);
+  const [low, high] = [spins[0]!, spins[spins.length - 1]!];
+  const edges = area.regions.flat();
+  const x = [...new Set([...evenly(low, high), ...spins, ...edges])].sort((p, q) => p - q);
+  const sampled = new Map(samples.map(({ spin, outcome }) => [spin, outcome.match]));
+  const label = { unit: '', scale: 'linear' } as const;
+  const place = at === undefined ? {} : { at };
+  const curve: Figure = {
+    kind: 'curve',
+    title: 'Best match over effective spin, and the threshold',
+    ...place,
+    x: { label: 'effective spin', ...label, values: x },
+    series: [
+      line('spline through the best matches', 'recomputed', x.map(matchAt)),
+      line('best match of each signal', 'residual', x.map((s) => sampled.get(s) ?? null)),
+      line('threshold', 'claimed', x.map(() => threshold)),
+      line('edges', 'noise', x.map((s) => (edges.includes(s) ? matchAt(s) : null))),
+    ],
+  };
+  const [first, last] = [edges[0], edges[edges.length - 1]];
+  if (first === undefined || last === undefined) return [curve];
+  const [m1, m2] = masses;
+  const grid = [...new Set([...evenly(low, high), ...spins])].sort((p, q) => p - q);
+  const edgeLine = (s: number) => grid.map((chi1) => Math.min(high, Math.max(low, (s - m1 * chi1) / m2)));
+  return [
+    curve,
+    {
+      kind: 'curve',
+      title: 'Plane of the two spins: between the lines a signal is matched at or above the threshold',
+      ...place,
+      x: { label: 'spin of the heavier body', ...label, values: grid },
+      series: [
+        line('lower edge', 'band-low', edgeLine(first)),
+        line('upper edge', 'band-high', edgeLine(last)),
+        line('sampled signals', 'residual', grid.map((s) => (sampled.has(s) ? s : null))),
+      ],
+    },
+  ];
+}
+
