@@ -73,6 +73,7 @@ const words: Readonly<Record<string, readonly [label: string, unit: string]>> = 
   cutoffHz: ['Cut-off of the plasma', 'Hz'],
   massLimitMsun: ['Mass below which the waves would pass', 'Msun'],
   ratio: ['Ratio', ''],
+  checkPredictedHz: ['Predicted from the remnant, as a check', 'Hz'],
   meanRatio: ['Mean ratio of the amplitudes', ''],
   phaseRms: ['Scatter of the phases', 'rad'],
   accretionErgPerS: ['Luminosity of the accretion', 'erg/s'],
@@ -103,6 +104,7 @@ export function componentWords(name: string, quantity: string, unit: string): Co
   const fit = fits[name];
   if (fit) return { label: fit, unit };
   if (name === 'start' || name === 'radiated') return balanceWords(name, quantity);
+  if (name === 'ratio' && quantity === 'em-frequency') return { label: 'Over the cut-off of the plasma', unit: '' };
   const [label, of] = words[name] ?? [fromName(name), ''];
   return { label, unit: of === VALUE ? unit : of };
 }
