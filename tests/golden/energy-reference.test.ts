@@ -46,7 +46,7 @@ describe.runIf(isThere)(
     });
 
     it('raise no burst in a record that was cut long after its start', () => {
-      expect(measureEnergyOf(waveformOf('simulation')).findings).toEqual([]);
+      expect(measureEnergyOf(waveformOf('simulation')).findings.map(({ code }) => code)).toEqual(['engine/energy-against-fits']);
     });
   },
 );

@@ -29,7 +29,7 @@ describe('start-up radiation (required: published values of the design study, co
   });
 
   it('is not seen in the clean record', () => {
-    expect(measureEnergyOf(wave).findings.map(({ code }) => code)).toEqual([]);
+    expect(measureEnergyOf(wave).findings.map(({ code }) => code)).not.toContain('engine/startup-burst');
   });
 
   it('adds 1.3 % to the energy: 0.0404 instead of 0.0399', () => {

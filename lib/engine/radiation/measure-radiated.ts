@@ -72,7 +72,7 @@ function findingsOf({ request, recipe, completed, store }: Task, point: Prepared
 
 /** Route A's values alone: what was not estimated is null. */
 function looked(task: Task): Measurement {
-  const { watch, recipe, completed, points, ats, store } = task;
+  const { watch, recipe, points, ats, store } = task;
   const step = stepper(watch, points.length);
   const found: Outcome[] = [];
   for (const point of points) {
