@@ -13,5 +13,6 @@ export function catalogueRows(): readonly QuantityRow[] {
     settings: settingRows(q),
     sweepable: q.sweepable,
     scale: q.scale,
+    ...(q.follows ? { follows: q.follows } : {}),
   }));
 }

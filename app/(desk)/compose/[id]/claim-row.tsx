@@ -8,7 +8,7 @@ import { readingOf } from './claimed-reading';
 import { ClaimSettings } from './claim-settings';
 import { errorAt } from './form-error';
 import { isListField, type RoleField } from './claim-fields';
-import type { QuantityRow } from './quantity-row';
+import { unitWith, type QuantityRow } from './quantity-row';
 import { WaveformList } from './waveform-list';
 import type { ComposerForm } from './waveform-part';
 
@@ -31,6 +31,7 @@ export function ClaimRow(props: ClaimRowProps) {
   const claim = watch(at);
   const quantity = catalogue.find((q) => q.id === claim.quantity);
   const verdict = verdicts.find((v) => v.id === claim.id)?.verdict;
+  const unit = quantity ? unitWith(quantity, claim.settings) : '';
   const needsNoise = quantity?.needsNoise ?? true;
   // What the new quantity has no place for would only be refused by the check.
   const clearUnused = (chosen: string) => {
@@ -56,9 +57,9 @@ export function ClaimRow(props: ClaimRowProps) {
         </td>
         {[0, 1].map((cell) => <RoleCell key={cell} form={form} index={index} id={id} role={roles[cell]} names={names} />)}
         <Choice when={needsNoise || claim.noise !== ''} label={`Noise of ${id}`} options={names.noise}>{(shared) => <Select {...shared} {...register(`${at}.noise`)} />}</Choice>
-        <td><Input dense aria-label={`Claimed value of ${id}${quantity?.unit ? `, ${quantity.unit}` : ''}`} aria-describedby={notes} spellCheck={false} autoComplete="off" {...register(`${at}.claimed`)} /></td>
+        <td><Input dense aria-label={`Claimed value of ${id}${unit ? `, ${unit}` : ''}`} aria-describedby={notes} spellCheck={false} autoComplete="off" {...register(`${at}.claimed`)} /></td>
         <td><Input dense aria-label={`Tolerance of ${id}, ${quantity?.scale === 'ln' ? 'a fraction' : 'in the unit of the number'}`} placeholder="natural" aria-invalid={errorAt(form, `${at}.tolerance`) ? true : undefined} aria-describedby={notes} inputMode="decimal" {...register(`${at}.tolerance`)} /></td>
-        <td className="whitespace-nowrap text-ink-2">{quantity?.scale === 'ln' && quantity.unit === '' ? 'T: fraction' : quantity?.unit || '1'}</td>
+        <td className="whitespace-nowrap text-ink-2">{quantity?.scale === 'ln' && unit === '' ? 'T: fraction' : unit || '1'}</td>
         <td className="whitespace-nowrap">{verdict ? <VerdictChip state={verdict} bare /> : <span className="text-ink-2">not yet</span>}</td>
       </tr>
       <tr><td colSpan={9} className="pb-4"><Beneath {...props} quantity={quantity} problem={problem} notes={notes} /></td></tr>

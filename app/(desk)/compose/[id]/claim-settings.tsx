@@ -1,7 +1,7 @@
 'use client';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
-import type { QuantityRow } from './quantity-row';
+import { settingsWith, type QuantityRow } from './quantity-row';
 import type { ComposerForm } from './waveform-part';
 
 interface SettingsProps {
@@ -16,13 +16,14 @@ const often = ['observable', 'method', 'fit', 'fieldGauss', 'joinHz', 'weight', 
 export function ClaimSettings({ form, index, quantity }: SettingsProps) {
   const at = `claims.${index}` as const;
   const { settings, overSetting } = form.watch(at);
-  const shown = quantity.settings.filter((s) => s.name !== overSetting && (often.includes(s.name) || settings[s.name] !== undefined));
-  const others = quantity.settings.filter((s) => s.name !== overSetting && !shown.includes(s));
-  const stray = Object.keys(settings).filter((name) => (settings[name] ?? '') !== '' && !quantity.settings.some((s) => s.name === name));
+  const meant = settingsWith(quantity, settings);
+  const shown = meant.filter((s) => s.name !== overSetting && (often.includes(s.name) || settings[s.name] !== undefined));
+  const others = meant.filter((s) => s.name !== overSetting && !shown.includes(s));
+  const stray = Object.keys(settings).filter((name) => (settings[name] ?? '') !== '' && !meant.some((s) => s.name === name));
   return (
     <div className="grid gap-3 sm:grid-cols-3 mid:grid-cols-4">
       {shown.map((s) => <SettingField key={s.name} form={form} index={index} row={s} />)}
-      {stray.map((name) => <TextField key={name} label={`${name}: no setting of this quantity`} error="Empty this box, or choose another quantity." {...form.register(`${at}.settings.${name}`)} />)}
+      {stray.map((name) => <TextField key={name} label={`${name}: no setting of this claim`} error="Empty this box, or choose another quantity or observable." {...form.register(`${at}.settings.${name}`)} />)}
       {others.length > 0 && (
         <SelectField label="Declare another setting" value="" onChange={(e) => form.setValue(`${at}.settings.${e.target.value}`, '', { shouldDirty: true })}>
           <option value="">choose one</option>

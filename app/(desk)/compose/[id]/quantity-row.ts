@@ -1,4 +1,4 @@
-import type { Role } from '@/lib/engine/contract/quantity';
+import type { Follows, Role } from '@/lib/engine/contract/quantity';
 import type { SettingName } from '@/lib/engine/contract/settings';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
 
@@ -12,4 +12,18 @@ export interface QuantityRow {
   readonly settings: readonly SettingRow[];
   readonly sweepable: readonly SettingName[];
   readonly scale: 'absolute' | 'ln';
+  readonly follows?: Follows;
+}
+
+type Written = Readonly<Record<string, string | undefined>>;
+
+const wordOf = ({ follows }: QuantityRow, settings: Written) => (follows === undefined ? undefined : follows.words[settings[follows.setting] || follows.houseDefault]);
+
+/** The unit of a claim as it stands in the form. */
+export const unitWith = (row: QuantityRow, settings: Written): string => wordOf(row, settings)?.unit ?? row.unit;
+
+/** The settings that mean something in such a claim. */
+export function settingsWith(row: QuantityRow, settings: Written): readonly SettingRow[] {
+  const meant = wordOf(row, settings)?.settings;
+  return meant === undefined ? row.settings : row.settings.filter(({ name }) => meant.includes(name));
 }
