@@ -3,6 +3,7 @@ import type { Claim } from '@/lib/claims/claim';
 import { parseClaimSheet } from '@/lib/claims/parse-sheet';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { Measurement } from '@/lib/engine/contract/measurement';
+import { unitOf } from '@/lib/engine/contract/quantity';
 import { ENGINE_VERSION } from '@/lib/engine/version';
 import type { Problem } from '@/lib/kernel/problem';
 import { ok, type Result } from '@/lib/kernel/result';
@@ -69,7 +70,7 @@ export async function preview(source: Source, { onProgress, digest, catalogue = 
 const previewClaim = (claim: Claim, { points, findings }: Measurement): PreviewClaim => ({
   id: claim.id,
   title: claim.quantity.title,
-  unit: claim.quantity.unit,
+  unit: unitOf(claim.quantity, claim.settings),
   points: points.map(({ at, value }, i) => ({ at, printed: claim.claimed[i]?.printed ?? '', value: value !== null && Number.isFinite(value) ? value : null })),
   findings,
 });
