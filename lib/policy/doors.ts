@@ -21,6 +21,7 @@ export const DOORS = {
   'GET /api/v1/submissions/{id}/events': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
   'GET /api/v1/submissions/{id}/sheet': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
   'GET /api/v1/submissions/{id}/files/{fileId}': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
+  'GET /api/v1/submissions/{id}/files/{fileId}/structure': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
   'GET /api/v1/submissions/{id}/figures': ['submission.view-draft', 'submission.view-review', 'submission.view-public'],
   'POST /api/v1/submissions/{id}/files': ['submission.edit'],
   'DELETE /api/v1/submissions/{id}/files': ['submission.edit'],

@@ -8,7 +8,7 @@ export interface Hdf5Task {
   readonly path: string;
   /** As the sheet calls the file, for messages. */
   readonly file: string;
-  readonly ask: { readonly kind: 'series'; readonly wish: SeriesWish } | { readonly kind: 'structure' };
+  readonly ask: { readonly kind: 'series'; readonly wish: SeriesWish } | { readonly kind: 'structure'; readonly format: ArrayStructure['format'] };
   readonly memoryBytes: number;
 }
 

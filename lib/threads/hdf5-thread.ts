@@ -1,6 +1,7 @@
 import { closeSync, fstatSync, openSync, readSync } from 'node:fs';
 import { parentPort, workerData } from 'node:worker_threads';
 import { readSeries, type Series } from '@/lib/formats/arrays/series';
+import { npyStructure, npzStructure } from '@/lib/formats/npy/npy-structure';
 import { hdf5Source } from '@/lib/formats/hdf5/hdf5-source';
 import { hdf5Structure } from '@/lib/formats/hdf5/hdf5-structure';
 import { faultOf } from '@/lib/formats/hdf5/hdf5-faults';
@@ -21,6 +22,7 @@ export async function answer(): Promise<void> {
 }
 
 async function inspect({ file, ask, memoryBytes }: Hdf5Task, bytes: RandomAccess): Promise<Hdf5Answer> {
+  if (ask.kind === 'structure' && ask.format !== 'hdf5') return ask.format === 'npy' ? npyStructure(file, bytes) : npzStructure(file, bytes);
   capMemory(memoryBytes);
   try {
     const one = await openOneFile(bytes);

@@ -6,6 +6,7 @@
 import { mkdtemp, open, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
+import { pathToFileURL } from 'node:url';
 import { Worker } from 'node:worker_threads';
 import type { ArrayStructure } from '@/lib/formats/arrays/structure';
 import type { Series } from '@/lib/formats/arrays/series';
@@ -28,8 +29,9 @@ export const readHdf5: ReadHdf5 = (file, bytes, wish) => readHdf5Within(hdf5Limi
 export const readHdf5Within = (limits: Hdf5Limits): ReadHdf5 => (file, bytes, wish) =>
   askThread(file, bytes, { kind: 'series', wish }, limits) as Promise<Result<Series, Problem[]>>;
 
-export const readHdf5Structure = (file: string, bytes: AsyncIterable<Uint8Array>, limits: Hdf5Limits = hdf5Limits): Promise<Result<ArrayStructure, Problem[]>> =>
-  askThread(file, bytes, { kind: 'structure' }, limits) as Promise<Result<ArrayStructure, Problem[]>>;
+/** What an array file of any format holds; none of its numbers is read. */
+export const readStructure = (file: string, format: ArrayStructure['format'], bytes: AsyncIterable<Uint8Array>, limits: Hdf5Limits = hdf5Limits): Promise<Result<ArrayStructure, Problem[]>> =>
+  askThread(file, bytes, { kind: 'structure', format }, limits) as Promise<Result<ArrayStructure, Problem[]>>;
 
 async function askThread(file: string, bytes: AsyncIterable<Uint8Array>, ask: Hdf5Task['ask'], limits: Hdf5Limits): Promise<Hdf5Answer> {
   const folder = await mkdtemp(path.join(tmpdir(), `counterfoil-run-${process.pid}-`));
@@ -55,8 +57,16 @@ async function spool(bytes: AsyncIterable<Uint8Array>, to: string): Promise<void
   }
 }
 
+/**
+ * A line that loads the thread's first file, from the folder that everything is started in. Bundled into
+ * the web process this module stands elsewhere, and a bundler that saw the file's name here would bundle
+ * the compiler behind it.
+ */
+const firstLine = (): string => `import(${JSON.stringify(pathToFileURL([process.cwd(), 'lib/threads', `hdf5-thread-entry.mjs`].join('/')).href)})`;
+
 function runThread(task: Hdf5Task, { timeMs }: Hdf5Limits): Promise<Hdf5Answer> {
-  const thread = new Worker(new URL('./hdf5-thread-entry.mjs', import.meta.url), {
+  const thread = new Worker(firstLine(), {
+    eval: true,
     workerData: task,
     env: { TMPDIR: tmpdir() },
     execArgv: [],

@@ -24,7 +24,12 @@ export async function openNpz(file: string, source: AsyncIterable<Uint8Array>, l
   } catch (thrown) {
     return err([unreadable(file, thrown)]);
   }
-  const zip = new ZipReader(new ChunkReader(chunks), { useWebWorkers: false, checkOverlappingEntry: true });
+  return openNpzReader(file, new ChunkReader(chunks), limits);
+}
+
+/** The same over any reader that can jump. */
+export async function openNpzReader(file: string, reader: Reader<unknown>, limits: ArchiveLimits = npzLimits): Promise<Result<NpzSource, Problem[]>> {
+  const zip = new ZipReader(reader, { useWebWorkers: false, checkOverlappingEntry: true });
   try {
     const entries = await listEntries(zip, limits);
     const problems = entries === null ? [tooMany(file, limits)] : archiveProblems(entries, file, limits);

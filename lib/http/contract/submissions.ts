@@ -2,6 +2,7 @@ import { z } from 'zod';
 import { pageQuery, pageSchema } from '@/lib/services/paging';
 import { figuresSchema, runSchema } from '@/lib/services/runs/run-schema';
 import { announcedFile } from '@/lib/services/files/upload-view';
+import { structureSchema } from '@/lib/services/files/structure-schema';
 import { findingAnswer } from '@/lib/services/submissions/answer-finding';
 import { fileSchema, submissionLineSchema, submissionSchema, uploadSchema } from '@/lib/services/submissions/submission-schema';
 import { draftPatch } from '@/lib/services/submissions/update-draft';
@@ -53,6 +54,7 @@ export const finishUpload = operation({ door: 'POST /api/v1/submissions/{id}/upl
 export const letGoOfUpload = operation({ door: 'DELETE /api/v1/submissions/{id}/uploads/{uploadId}', summary: 'Lets go of an upload that was begun.', params: uploadParam, answer: nothing });
 export const answerFinding = operation({ door: 'PUT /api/v1/submissions/{id}/answers', summary: 'The authors’ word on a finding of the latest check; an empty one takes it back.', params: idParam, body: findingAnswer, answer: nothing });
 export const readFile = operation({ door: 'GET /api/v1/submissions/{id}/files/{fileId}', summary: 'An uploaded file, as an attachment.', params: z.strictObject({ id: uuid, fileId: uuid }), media: 'application/octet-stream' });
+export const readFileStructure = operation({ door: 'GET /api/v1/submissions/{id}/files/{fileId}/structure', summary: 'What an uploaded .h5, .npz or .npy holds: its datasets with shape, type and attributes, none of their numbers.', params: z.strictObject({ id: uuid, fileId: uuid }), answer: structureSchema });
 export const checkSubmission = operation({ door: 'POST /api/v1/submissions/{id}/check', summary: 'Asks for the server’s reading of a draft before it is lodged.', params: idParam, status: 202, answer: z.object({ runId: uuid }) });
 export const lodgeSubmission = operation({ door: 'POST /api/v1/submissions/{id}/lodge', summary: 'Freezes the revision and asks for its official run.', params: idParam, status: 202, ifMatch: true, answer: z.object({ revision: z.int(), runId: uuid }) });
 export const withdrawSubmission = operation({ door: 'POST /api/v1/submissions/{id}/withdraw', summary: 'Takes a submission back before a decision; nothing is erased.', params: idParam, body: z.strictObject({ reason: z.string().max(2000) }), answer: nothing });
@@ -65,4 +67,4 @@ export const watchRuns = operation({ door: 'GET /api/v1/submissions/{id}/events'
 export const listVariations = operation({ door: 'GET /api/v1/submissions/{id}/variations', summary: 'Your reruns with other settings, and how many more you may ask for now.', params: idParam, query: page, answer: pageSchema(variationSchema).extend({ left: z.int() }) });
 export const askVariation = operation({ door: 'POST /api/v1/submissions/{id}/variations', summary: 'Asks for a rerun of one lodged claim with other settings; it changes no number of the record.', params: idParam, body: variationInput, status: 202, answer: z.object({ variationId: uuid, runId: uuid }) });
 
-export const submissionOperations = [listSubmissions, createSubmission, readSubmission, editSubmission, readSheet, addFiles, removeFile, readFile, beginUpload, sendPart, finishUpload, letGoOfUpload, checkSubmission, answerFinding, lodgeSubmission, withdrawSubmission, reviseSubmission, listRuns, readFigures, watchRuns, listVariations, askVariation] as const;
+export const submissionOperations = [listSubmissions, createSubmission, readSubmission, editSubmission, readSheet, addFiles, removeFile, readFile, readFileStructure, beginUpload, sendPart, finishUpload, letGoOfUpload, checkSubmission, answerFinding, lodgeSubmission, withdrawSubmission, reviseSubmission, listRuns, readFigures, watchRuns, listVariations, askVariation] as const;

@@ -1,6 +1,7 @@
 import { BlobWriter, Uint8ArrayReader, ZipWriter } from '@zip.js/zip.js';
 import { describe, expect, it } from 'vitest';
 import { formatProblem } from '@/lib/kernel/problem';
+import { npyStructure, npzStructure, type Jumping } from '@/lib/formats/npy/npy-structure';
 import { openNpz } from '@/lib/formats/npy/npz-source';
 import { readNoise } from '@/lib/formats/read-noise';
 import { parseNoise } from '@/lib/claims/noise';
@@ -136,6 +137,20 @@ function joined(a: Uint8Array, b: Uint8Array): Uint8Array {
   both.set(b, a.length);
   return both;
 }
+
+describe('what an array file holds is listed from its headers', () => {
+  const jumping = (name: string): Jumping => {
+    const bytes = fixture(name);
+    return { size: bytes.length, read: (into, at) => (into.set(bytes.subarray(at, at + into.length)), Math.min(into.length, bytes.length - at)) };
+  };
+  it('of an .npz each array, with the reason beside what cannot be read', async () => {
+    const found = await npzStructure('p.npz', jumping('pickled.npz'));
+    expect(found.ok && found.value.entries.map(({ path, shape, complex, refusal }) => [path, shape, complex, refusal?.slice(0, 33) ?? null])).toEqual([['t', [40], false, null], ['modes', [3, 2], false, null], ['data', null, false, 'saw an array of Python objects, s'], ['allow_pickle', null, false, 'saw numbers of the type "|b1"; ex']]);
+  });
+  it('of an .npy its one array', async () => {
+    expect(await npyStructure('c.npy', jumping('complex.npy'))).toMatchObject({ ok: true, value: { entries: [{ path: '', shape: [40], complex: true, refusal: null }] } });
+  });
+});
 
 describe('the sheet is held to the format', () => {
   it.each([

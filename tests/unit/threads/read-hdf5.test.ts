@@ -2,7 +2,7 @@ import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
-import { hdf5Limits, readHdf5, readHdf5Structure, readHdf5Within } from '@/lib/threads/read-hdf5';
+import { hdf5Limits, readHdf5, readHdf5Within, readStructure } from '@/lib/threads/read-hdf5';
 import { formatProblem } from '@/lib/kernel/problem';
 import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
 import { fixture, fixturePath, inPieces, open } from '../formats/array-waves';
@@ -33,7 +33,7 @@ describe('a hostile HDF5 file never hurts its reader', () => {
   });
 
   it('circles and depths end, and what leads out is listed with its reason', async () => {
-    const found = await readHdf5Structure('h.h5', hostile('h.h5'));
+    const found = await readStructure('h.h5', 'hdf5', hostile('h.h5'));
     if (!found.ok) throw new Error(found.error.map(formatProblem).join());
     const { entries, cut } = found.value;
     expect([cut, entries.filter(({ path }) => path.startsWith('/cycle')).map(({ path }) => path)]).toEqual([true, ['/cycle', '/cycle/self']]);
@@ -95,7 +95,7 @@ describe.skipIf(!existsSync(event))('the open data of the first event (skipped w
 
   it('a detector’s strain, packed, with the even steps that its attributes name', async () => {
     const name = 'H-H1_LOSC_4_V2-1126259446-32.hdf5';
-    const found = await readHdf5Structure(name, files(name)(name));
+    const found = await readStructure(name, 'hdf5', files(name)(name));
     expect(found.ok && found.value.entries.find(({ path }) => path === '/strain/Strain')).toMatchObject({ shape: [131072], attributes: expect.arrayContaining([{ name: 'Xspacing', value: '0.000244140625' }]) });
     const { waveform } = await open({ file: name, datasets: { plus: '/strain/Strain' }, time: { start: 0, step: 0.000244140625 }, timeUnit: 's', amplitudeUnit: 'strain' }, files(name), readHdf5);
     expect(waveform?.axis.length).toBe(131072);
