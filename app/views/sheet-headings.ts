@@ -42,11 +42,14 @@ const filesIn = (part: Loose | undefined): readonly string[] => {
   return [part?.['file'], ...many].filter((name): name is string => typeof name === 'string');
 };
 
+/** The waveforms that name a series as theirs. */
+const membersOf = (series: unknown, sheet: SheetParts): string[] => Object.entries(sheet.waveforms).flatMap(([name, waveform]) => (waveform['series'] === series ? [name] : []));
+
 /** Names of waveforms and curve, and the files they stand in. */
 function wordsOf(claim: Loose | undefined, sheet: SheetParts) {
   const of = isLoose(claim?.['of']) ? claim['of'] : undefined;
   const noise = text(claim?.['noise']);
-  const names = Object.values(of ?? {}).filter((name): name is string => typeof name === 'string');
+  const names = Object.entries(of ?? {}).flatMap(([role, value]) => (role === 'series' ? membersOf(value, sheet) : [value].flat())).filter((name): name is string => typeof name === 'string');
   const files = [...names.flatMap((name) => filesIn(sheet.waveforms[name])), ...(noise ? filesIn(sheet.noise[noise]) : [])];
   return { of, noise, ...(files.length > 0 ? { files: [...new Set(files)] } : {}), ...sourcesOf(claim, names, noise, sheet) };
 }

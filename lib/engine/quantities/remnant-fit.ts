@@ -1,4 +1,5 @@
 import type { Quantity } from '../contract/quantity';
+import { fitWords } from '../remnant/fit-figure';
 import { binaryOfInputs } from '../remnant/fit-point';
 import { measureFit } from '../remnant/measure-fit';
 import { fitObservables } from '../remnant/published-fits';
@@ -15,10 +16,11 @@ export const remnantFit: Quantity = {
   id: 'remnant-fit',
   title: 'Remnant by published fits',
   symbol: 'M_f,\\ \\chi_f,\\ \\mathcal L,\\ v',
-  unit: '',
+  unit: fitWords.mass.unit,
   roles: ['a'],
   optionalRoles: ['a'],
   choices: { observable: fitObservables },
+  follows: { setting: 'observable', houseDefault: 'mass', words: Object.fromEntries(fitObservables.map((observable) => [observable, { unit: fitWords[observable].unit }])) },
   needsNoise: false,
   settings: ['observable', 'fit', 'massRatio', 'chi1z', 'chi2z'],
   required: (inputs, declared) => (binaryOfInputs(inputs, declared) === null ? ['massRatio'] : []),
