@@ -2,18 +2,31 @@ import type { RadiationRecord } from '../radiation/radiation-record';
 
 /** (2,2) read in the inspiral, where its amplitude and frequency must fit together. */
 export interface InspiralReading {
-  /** Orbital frequency Ω = ω₂₂/2, in rad/M. */
+  /** Orbital frequency Ω = ω₂₂/2, in rad/M, averaged over five cycles of the wave around it. */
   readonly omega: number;
   readonly atM: number;
   readonly amplitude: number;
-  /** Chirp mass over M, from Ω and its rate at leading order. */
-  readonly chirpMass: number;
 }
 
-/** Orbital frequencies at which it is read, the best first: late enough for a rate, early enough for leading order. */
+export interface Inspiral {
+  /** At the best of a few frequencies; null where the record does not sweep through any. */
+  readonly reading: InspiralReading | null;
+  /** Chirp mass over M, from the rise of Ω at leading order; null where too little of it is there. */
+  readonly chirpMass: number | null;
+}
+
+/** Orbital frequencies at which it is read, the best first: early enough for leading order. */
 const FREQUENCIES = [0.03, 0.025, 0.035, 0.04, 0.02, 0.015] as const;
-/** Cycles of (2,2) on either side over which Ω and its rate are fitted. */
-const HALF_CYCLES = 1.5;
+/** Means over so many cycles of the wave even out an eccentric orbit. */
+const CYCLES = 5;
+/** Around the place that is read, one turn of the ellipse on either side: more would take in too much of the rise. */
+const NEAR_CYCLES = 2.4;
+/** Leading order holds up to about this share of the frequency at the peak, whatever the unit of time. */
+const EARLY = 0.25;
+/** And Ω must rise by this between the first and the last mean. */
+const LEAST_RISE = 1.15;
+/** The start of a record may hold start-up radiation. */
+const START = 0.05;
 
 interface Track {
   readonly axis: Float64Array;
@@ -47,31 +60,35 @@ function reaching({ axis, phase, last }: Track, omega: number): number {
   return -1;
 }
 
-/** Parabola through the phase around sample i: Ω and Ω̇ there. */
-function rateAt({ axis, phase, last }: Track, i: number): { readonly omega: number; readonly rate: number } | null {
-  const reach = 2 * Math.PI * HALF_CYCLES;
-  let [from, to] = [i, i];
-  while (from > 0 && Math.abs(phase[i]! - phase[from]!) < reach) from--;
-  while (to < last && Math.abs(phase[to]! - phase[i]!) < reach) to++;
-  if (Math.abs(phase[i]! - phase[from]!) < reach || Math.abs(phase[to]! - phase[i]!) < reach || to - from < 12) return null;
-  const scale = axis[to]! - axis[from]!;
-  const s = [0, 0, 0, 0, 0];
-  const r = [0, 0, 0];
-  for (let k = from; k <= to; k++) {
-    const [x, y] = [(axis[k]! - axis[i]!) / scale, phase[k]! - phase[i]!];
-    let power = 1;
-    for (let p = 0; p < 5; p++, power *= x) {
-      s[p] = s[p]! + power;
-      if (p < 3) r[p] = r[p]! + y * power;
-    }
-  }
-  const [s0, s1, s2, s3, s4] = s as [number, number, number, number, number];
-  const [r0, r1, r2] = r as [number, number, number];
-  const det = s0 * (s2 * s4 - s3 * s3) - s1 * (s1 * s4 - s3 * s2) + s2 * (s1 * s3 - s2 * s2);
-  const slope = (s0 * (r1 * s4 - s3 * r2) - r0 * (s1 * s4 - s3 * s2) + s2 * (s1 * r2 - r1 * s2)) / det;
-  const bend = (s0 * (s2 * r2 - r1 * s3) - s1 * (s1 * r2 - r1 * s2) + r0 * (s1 * s3 - s2 * s2)) / det;
-  const sense = Math.sign(slope);
-  return { omega: (sense * slope) / scale / 2, rate: (sense * bend) / scale ** 2 };
+interface Mean {
+  readonly omega: number;
+  readonly t: number;
+}
+
+/** Mean Ω over the cycles that begin (step 1) or end (step −1) at sample i. */
+function meanFrom({ axis, phase, last }: Track, i: number, step: 1 | -1, cycles = CYCLES): Mean | null {
+  let k = i;
+  while (k > 0 && k < last && Math.abs(phase[k]! - phase[i]!) < 2 * Math.PI * cycles) k += step;
+  const turned = Math.abs(phase[k]! - phase[i]!);
+  if (turned < 2 * Math.PI * cycles) return null;
+  return { omega: turned / Math.abs(axis[k]! - axis[i]!) / 2, t: (axis[i]! + axis[k]!) / 2 };
+}
+
+/** ω₂₂ over the last half radian before the largest sample. */
+function peakFrequency({ axis, phase, last }: Track): number {
+  let k = last;
+  while (k > 0 && Math.abs(phase[last]! - phase[k]!) < 0.5) k--;
+  return Math.abs(phase[last]! - phase[k]!) / (axis[last]! - axis[k]!);
+}
+
+/** At leading order Ω^{−8/3} falls along a straight line: two means far apart give its slope. */
+function chirpMassOf(track: Track): number | null {
+  const { axis, last } = track;
+  const from = axis.findIndex((t) => t >= axis[0]! + START * (axis[last]! - axis[0]!));
+  const end = reaching(track, (EARLY * peakFrequency(track)) / 2);
+  const [first, late] = [meanFrom(track, from, 1), end < 0 ? null : meanFrom(track, end, -1)];
+  if (first === null || late === null || !(late.omega > LEAST_RISE * first.omega) || !(late.t > first.t)) return null;
+  return ((5 / 256) * ((first.omega ** (-8 / 3) - late.omega ** (-8 / 3)) / (late.t - first.t))) ** 0.6;
 }
 
 /** Mean amplitude over the samples within half a cycle of sample i. */
@@ -82,17 +99,17 @@ function amplitudeAt({ phase, last }: Track, size: (i: number) => number, i: num
   return sum / n;
 }
 
-/** Null without (2,2) or where the record does not sweep through such a frequency. Linear in the samples. */
-export function readInspiral(record: RadiationRecord): InspiralReading | null {
+/** Null without (2,2). Linear in the samples. */
+export function readInspiral(record: RadiationRecord): Inspiral | null {
   const found = trackOf(record);
   if (found === null) return null;
+  const { track, size } = found;
   for (const wanted of FREQUENCIES) {
-    const i = reaching(found.track, wanted);
-    const here = i < 0 ? null : rateAt(found.track, i);
-    if (here === null || !(here.omega > 0 && here.rate > 0)) continue;
-    const { omega, rate } = here;
-    const chirpMass = ((5 / 96) * rate * omega ** (-11 / 3)) ** 0.6;
-    return { omega, atM: record.axis[i]!, amplitude: amplitudeAt(found.track, found.size, i), chirpMass };
+    const i = reaching(track, wanted);
+    const [before, after] = i < 0 ? [null, null] : [meanFrom(track, i, -1, NEAR_CYCLES), meanFrom(track, i, 1, NEAR_CYCLES)];
+    if (before === null || after === null) continue;
+    const reading = { omega: (before.omega + after.omega) / 2, atM: record.axis[i]!, amplitude: amplitudeAt(track, size, i) };
+    return { reading, chirpMass: chirpMassOf(track) };
   }
-  return null;
+  return { reading: null, chirpMass: chirpMassOf(track) };
 }

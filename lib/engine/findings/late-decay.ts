@@ -8,6 +8,8 @@ export interface LateDecay {
   readonly rate: number | null;
   /** Rad per unit of the axis in the same stretch, either sense. */
   readonly turning: number | null;
+  /** Does it fall as an exponential there, and not ever faster as a pulse does? */
+  readonly isExponential: boolean;
   /** Where the decay ends in a floor; null where it does not. */
   readonly floor: Floor | null;
 }
@@ -30,6 +32,8 @@ const ABOVE = 10;
 const STALLED = 0.3;
 /** Lower floors touch no number that is printed. */
 const LEAST_FLOOR = 1e-4;
+/** Slopes of the first and second half of an exponential agree to this. */
+const STRAIGHT = 1.4;
 /** A curve that varies less than this has no peak. */
 const FLAT = 1e-3;
 
@@ -82,12 +86,15 @@ export function lateDecay(axis: Float64Array, re: Float64Array, im: Float64Array
   }
   const peak = size[peakIndex]!;
   if (peakIndex === 0 || peakIndex >= n - 2 || !(peak - least > FLAT * peak)) return null;
-  const bare = { peakIndex, peak, endShare: size[n - 1]! / peak, rate: null, turning: null, floor: null };
+  const bare = { peakIndex, peak, endShare: size[n - 1]! / peak, rate: null, turning: null, isExponential: false, floor: null };
   const start = size.findIndex((x, i) => i > peakIndex && x < HALF * peak);
   if (start < 0) return bare;
   const down = size.findIndex((x, i) => i > start && x < TWENTIETH * peak);
   const end = down < 0 ? n : down;
   const line = logLine(axis, size, start, end);
   if (line === null || !(line.slope < 0)) return bare;
-  return { ...bare, rate: -line.slope, turning: turningBetween(axis, re, im, start, end), floor: floorOf(axis, size, start, line, peakIndex) };
+  const middle = (start + end) >> 1;
+  const [early, late] = [logLine(axis, size, start, middle), logLine(axis, size, middle, end)];
+  const bend = early === null || late === null ? Number.NaN : late.slope / early.slope;
+  return { ...bare, isExponential: bend < STRAIGHT && bend > 1 / STRAIGHT, rate: -line.slope, turning: turningBetween(axis, re, im, start, end), floor: floorOf(axis, size, start, line, peakIndex) };
 }

@@ -1,5 +1,5 @@
 import type { Waveform } from '@/lib/engine/contract/waveform';
-import { binaryOf, changed, findingsOf, inM, type FindingSpecimen } from './finding-specimen';
+import { binaryOf, changed, cut, findingsOf, inM, type FindingSpecimen } from './finding-specimen';
 
 const twoToOne = binaryOf({ massRatio: 2, modes: ['22', '21', '33'] });
 const declared = { binary: { massRatio: 2, chi1z: 0, chi2z: 0 } } as const;
@@ -30,11 +30,14 @@ function moved(driftM: number) {
   const quadrupole = modes.find(({ l, m }) => l === 2 && m === 2)!;
   const span = t[t.length - 1]! - t[0]!;
   const rate = (values: Float64Array, i: number): number => (i === 0 || i === t.length - 1 ? 0 : (values[i + 1]! - values[i - 1]!) / (t[i + 1]! - t[i - 1]!));
-  return changed(twoToOne, 2, 1, (re, im, at) => {
+  const by = (at: number): readonly [number, number] => {
     const i = Math.round(at / 0.5);
-    const by = (driftM * at) / span / 3;
-    return [re + by * rate(quadrupole.re, i), im + by * rate(quadrupole.im, i)];
-  });
+    const gain = (driftM * at) / span / 3;
+    return [gain * rate(quadrupole.re, i), gain * rate(quadrupole.im, i)];
+  };
+  const plus = changed(twoToOne, 2, 1, (re, im, at) => [re + by(at)[0], im + by(at)[1]]);
+  // (2,−1) is the mirror: H*, with the sign of an even ℓ.
+  return changed(plus, 2, -1, (re, im, at) => [re + by(at)[0], im - by(at)[1]]);
 }
 
 /** Strain turned into its first or second derivative by central differences. */
@@ -95,5 +98,13 @@ export const modeSpecimens: readonly FindingSpecimen[] = [
   {
     number: 'V21', code: 'engine/strain-units', level: 'needs-answer', when: 'time is in half its unit',
     raises: () => energy(slowed(2)), says: [/chirp mass of 0\.\d+ M/, 'gives 0.406 M'], silent: () => energy(twoToOne, {}),
+  },
+  {
+    number: 'V21', code: 'engine/strain-units', level: 'needs-answer', when: 'time is in twice its unit and the record holds the merger alone',
+    raises: () => energy(cut(slowed(0.4), 380, 5000)), says: [/rings at Mω = 1\.\d+/, 'between 0.25 and 1.2'], silent: () => energy(cut(twoToOne, 950, 5000)),
+  },
+  {
+    number: 'V21', code: 'engine/strain-units', level: 'needs-answer', when: 'the merger alone is louder than its masses allow',
+    raises: () => energy(cut(scaled(1 / 0.630783), 950, 5000)), says: ['At its peak', 'divided out'], silent: () => energy(cut(twoToOne, 950, 5000)),
   },
 ];

@@ -93,7 +93,7 @@ export const recordSpecimens: readonly FindingSpecimen[] = [
   },
   {
     number: 'V12', code: 'engine/noise-floor', level: 'note', when: 'the ringing sinks into noise that an energy goes on integrating',
-    raises: () => energy(noisy(5e-4)), says: ['(2,2) of A stops decaying at', '×10⁻', /from about t = \d+/], silent: () => energy(clean),
+    raises: () => energy(noisy(5e-4)), says: [/\(2,2\) of A stops decaying at 0\.00\d+ of its peak/, /from about t = \d+/], silent: () => energy(clean),
   },
   {
     number: 'V12', code: 'engine/noise-floor', level: 'note', when: 'the ringing stalls inside the window of its fit',
