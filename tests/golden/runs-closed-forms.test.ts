@@ -30,7 +30,8 @@ describe('the order of a series', () => {
     expect(components!.amplitude).toAgreeWith(3, 1e-8);
     expect(components!.pointwiseMedian).toAgreeWith(2.7971166184658367, 1e-8);
     expect(components!.pointwiseRange).toAgreeWith(0, 1e-8);
-    expect(components!.coarseDifference! / components!.fineDifference!).toAgreeWith(1.8992, 2e-4);
+    expect(components!.ratio).toAgreeWith(1.8992, 2e-4);
+    expect(components!.coarseDifferenceRad).toAgreeWith(0.2887, 1e-3);
   });
 });
 

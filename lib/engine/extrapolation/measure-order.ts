@@ -13,7 +13,7 @@ import { orderOfValues, richardsonValue, type OfThree, type Spacings } from './r
 import type { Curve } from './run-curves';
 import type { Run } from './runs';
 import { propagatedLines, sensitivities } from './series-budget';
-import { approachFigure, convergenceFigures } from './series-figures';
+import { approachFigure, convergenceFigures, curveUnit } from './series-figures';
 import { foundInRuns, named, noOrder, short, spreadFindings, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
 import { areRuns, spacedRuns, type SpacedRuns } from './spaced-runs';
@@ -72,7 +72,6 @@ function ofCurves(spaced: SpacedRuns, observable: 'dominant' | Curve, request: M
   if (!found.ok) return stopped([because(runs, `Over time, the ${curve === 'complex' ? 'complex values' : `${curve}s`}`, found.error), ...seen]);
   const order = found.value;
   const pointwise = pointwiseOrders(curves, curve, spacings, slip);
-  const [coarseDifference, fineDifference] = differencesOf(curves, curve);
   const of = { runs: three, spacings, interval, curve, curves, order };
   const { mode, severalModes, floor } = followed;
   const budget = (): readonly BudgetLine[] => {
@@ -83,7 +82,7 @@ function ofCurves(spaced: SpacedRuns, observable: 'dominant' | Curve, request: M
     {
       value: order,
       byRouteB: request.routeAOnly ? Number.NaN : orderByRouteB(three, interval, curve, spacings),
-      components: { ...ordersOf(curves, spacings, slip), pointwiseMedian: pointwise.median, pointwiseRange: pointwise.range, coarseDifference, fineDifference },
+      components: { ...ordersOf(curves, spacings, slip), pointwiseMedian: pointwise.median, pointwiseRange: pointwise.range, ...differences(curveUnit[curve], differencesOf(curves, curve)) },
       budget,
       findings: [...seen, ...spreadFindings(pointwise.range, pointwise.median, where)],
       used: usedSettings(
@@ -117,6 +116,13 @@ function besides(runs: readonly Run[], request: MeasureRequest): Record<string, 
   return { ...ordersOf(curves, spacingsOf(runs), slip), pointwiseMedian: median, pointwiseRange: range };
 }
 
+/** The two differences and their ratio; in a unit of their own where that is an angle or none. */
+function differences(unit: string, [coarse, fine]: readonly [number, number]): Record<string, number> {
+  const ratio = coarse / fine;
+  if (unit === 'rad') return { coarseDifferenceRad: coarse, fineDifferenceRad: fine, ratio };
+  return unit === '' ? { coarseDifference: coarse, fineDifference: fine, ratio } : { ratio };
+}
+
 const valuesA = (scalars: readonly RunScalar[]): OfThree => scalars.map(({ A }) => A) as unknown as OfThree;
 
 function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars, request: MeasureRequest, watch: Watch, step: (doing: string) => void): Measurement {
@@ -137,6 +143,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
     const moved = orderOfValues(x as unknown as OfThree, spacings);
     return moved.ok ? moved.value : Number.NaN;
   };
+  const unit = scalars.get(observable)?.unit ?? (observable === 'phase-at-peak' ? 'rad' : '');
   const limit = richardsonValue(values[1], values[2], spacings[1], spacings[2], order);
   const own = usedSettings([{ name: 'observable', value: observable, matters: true }], request);
   const last = read[2]!;
@@ -144,7 +151,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
     {
       value: order,
       byRouteB: orderByNewton((b1 - b2) / (b2 - b3), spacings),
-      components: { ...besides(runs, request), coarseDifference: values[0] - values[1], fineDifference: values[1] - values[2] },
+      components: { ...besides(runs, request), ...differences(unit, [values[0] - values[1], values[1] - values[2]]) },
       budget: () => {
         const made = { scalars: read, from: orderAt, value: order, moves: sensitivities(orderAt, values) };
         return [...propagatedLines(made, 'Carried from the runs to the order.'), fourthRunLine(order, scalarBefore(spaced, meter, values))];
@@ -153,7 +160,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
       used: { settings: [...own.settings, ...last.settings], assumed: [...own.assumed, ...last.assumed] },
       figures: () => [
         approachFigure({
-          title: `${observable} against the grid spacing`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit: scalars.get(observable)?.unit ?? (observable === 'phase-at-peak' ? 'rad' : ''), name: observable,
+          title: `${observable} against the grid spacing`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit, name: observable,
           law: (h) => limit + (values[2] - limit) * (h / spacings[2]) ** order, lawName: `Limit plus a power ${short(order, 3)} of the spacing`, claimed: null,
         }),
       ],
