@@ -10,6 +10,11 @@ import { isFinding, stop, type At } from '../tones/measure-tones';
 import { fieldScale, type FieldScale } from './field-scale';
 import { phi2Record, type Phi2Record } from './phi2-record';
 
+export interface EmUncertainty {
+  readonly quadrature: number;
+  readonly rounding: number;
+}
+
 /** φ₂ of one file from a start on: everything but the field to which it is rescaled. */
 export interface EmSource extends Phi2Record {
   readonly waveform: Waveform;
@@ -19,6 +24,8 @@ export interface EmSource extends Phi2Record {
   readonly modes: readonly ModeEnergy[];
   /** E/M as the file has it, by route B; computed when first asked for. */
   readonly byRouteB: () => number;
+  /** Standard uncertainties as shares of E, the same at every field; computed when first asked for. */
+  readonly shares: () => EmUncertainty;
 }
 
 /** One point of a claim: a source at a field. */
@@ -28,7 +35,8 @@ export interface EmPoint {
   readonly scale: FieldScale;
 }
 
-function once<T>(make: () => T): () => T {
+/** Makes a value when it is first asked for. */
+export function once<T>(make: () => T): () => T {
   let made: { readonly value: T } | null = null;
   return () => (made ??= { value: make() }).value;
 }
@@ -53,7 +61,7 @@ export function emSource(waveform: Waveform, declared: DeclaredSettings): EmSour
   const radiation = radiationOnSamples(record, NO_FLOOR, houseSamples, false);
   const scaled = (modes: readonly ModeEnergy[]): ModeEnergy[] => modes.map((mode) => ({ ...mode, energy: overFlux * mode.energy }));
   const byRouteB = once(() => totalEnergy(scaled(energyOnPanels(record, startM, NO_FLOOR))));
-  return { ...found, waveform, startM, radiation, modes: scaled(energyOnSamples(radiation, startM)), byRouteB };
+  return { ...found, waveform, startM, radiation, modes: scaled(energyOnSamples(radiation, startM)), byRouteB, shares: once(() => sharesOf(radiation, startM, waveform.significantDigits)) };
 }
 
 /**
@@ -79,11 +87,6 @@ export const emEnergyA = ({ source, scale }: EmPoint): number => scale.factor * 
 /** E/M by route B. */
 export const emEnergyB = ({ source, scale }: EmPoint): number => scale.factor * source.byRouteB();
 
-export interface EmUncertainty {
-  readonly quadrature: number;
-  readonly rounding: number;
-}
-
 const ROOT3 = Math.sqrt(3);
 /** Relative size below which no computation in double precision is trusted (engine design). */
 const LEAST = 1e-13;
@@ -101,17 +104,18 @@ function coarser({ axis, news, ...rest }: SampledRadiation): SampledRadiation {
 /**
  * How far route A moves with local polynomials of order 6 instead of 8 and on half of the samples, and with
  * the last printed digit of every sample: nothing is differentiated, so that a slip in common bounds the whole.
- * Shape:  two standard uncertainties.
- * Units:  those of E/M.
- * Error:  half-width over √3; half the samples count as a fifteenth, as a rule of fourth order would have it.
- * Fails:  never; zero rounding where nothing was printed.
- * Source: settings.md rule 12; domain reference section 5.
+ * Half of the samples count as a fifteenth, as a rule of fourth order would have it.
  */
+function sharesOf(radiation: SampledRadiation, startM: number, digits: number | null): EmUncertainty {
+  const summed = (of: SampledRadiation, order: 6 | 8): number => totalEnergy(energyOnSamples(of, startM, order));
+  const here = summed(radiation, 8);
+  const moved = Math.abs(summed(radiation, 6) - here) + Math.abs(summed(coarser(radiation), 8) - here) / BY_STEP;
+  return { quadrature: Math.max(moved / here / ROOT3, LEAST), rounding: digits === null ? 0 : 2 * relativeSlip(digits) };
+}
+
+/** The standard uncertainties of a point's E/M. */
 export function emUncertainty(point: EmPoint): EmUncertainty {
-  const { source, scale } = point;
+  const { quadrature, rounding } = point.source.shares();
   const here = emEnergyA(point);
-  const summed = (radiation: SampledRadiation, order: 6 | 8): number => scale.factor * source.overFlux * totalEnergy(energyOnSamples(radiation, source.startM, order));
-  const moved = Math.abs(summed(source.radiation, 6) - here) + Math.abs(summed(coarser(source.radiation), 8) - here) / BY_STEP;
-  const digits = source.waveform.significantDigits;
-  return { quadrature: Math.max(moved / ROOT3, LEAST * here), rounding: digits === null ? 0 : 2 * relativeSlip(digits) * here };
+  return { quadrature: quadrature * here, rounding: rounding * here };
 }

@@ -1,14 +1,14 @@
-import type { CompletedModes } from '../conditioning/complete-modes';
-import { completeModes } from '../conditioning/complete-modes';
+import { completeModes, type CompletedModes } from '../conditioning/complete-modes';
 import type { Finding } from '../contract/finding';
+import type { BudgetLine } from '../contract/measurement';
 import type { MeasureRequest } from '../contract/quantity';
 import type { DeclaredSettings } from '../contract/settings';
 import { energyRecipe } from '../radiation/energy-recipe';
 import { preparerOf, type PreparedPoint } from '../radiation/prepare-radiated';
-import { computationUncertainty, type ComputationUncertainty } from '../radiation/radiation-budget';
+import { radiationBudget } from '../radiation/radiation-budget';
 import { house, sampledStore, type Outcome, type SampledStore } from '../radiation/radiation-recipe';
 import { isFinding, stop, type At } from '../tones/measure-tones';
-import { emPreparer, type EmPoint } from './em-point';
+import { emPreparer, once, type EmPoint } from './em-point';
 
 /** What the other file radiates in gravitational waves, as `radiated-energy` has it. */
 export interface GwEnergy {
@@ -18,17 +18,13 @@ export interface GwEnergy {
   readonly outcome: Outcome;
   /** By route B; computed when first asked for. */
   readonly byRouteB: () => number;
-  readonly uncertainty: () => ComputationUncertainty;
+  /** The same at every field; computed when first asked for. */
+  readonly budget: () => readonly BudgetLine[];
 }
 
 export interface RatioPoint {
   readonly em: EmPoint;
   readonly gw: GwEnergy;
-}
-
-function once<T>(make: () => T): () => T {
-  let made: { readonly value: T } | null = null;
-  return () => (made ??= { value: make() }).value;
 }
 
 /** Where both integrals begin, and the floor; field and mass mean nothing to the gravitational one. */
@@ -46,7 +42,7 @@ function gwEnergy(request: MeasureRequest): GwEnergy | Finding {
   return {
     completed, point, store, outcome,
     byRouteB: once(() => energyRecipe.byRouteB(point)?.value ?? Number.NaN),
-    uncertainty: once(() => computationUncertainty({ recipe: energyRecipe, point, store, digits }, outcome)),
+    budget: once(() => radiationBudget({ recipe: energyRecipe, point, store, digits }, outcome)),
   };
 }
 

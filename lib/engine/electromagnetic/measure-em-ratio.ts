@@ -4,7 +4,6 @@ import type { MeasureRequest, Watch } from '../contract/quantity';
 import { burstFindings, samplingFindings } from '../radiation/radiation-findings';
 import { energyOnSamples } from '../radiation/energy-on-samples';
 import { energyRecipe } from '../radiation/energy-recipe';
-import { radiationBudget } from '../radiation/radiation-budget';
 import { isFinding, measureTones, type ToneRecipe } from '../tones/measure-tones';
 import { floorRows, usedSettings } from '../tones/used-rows';
 import { carried, emComputation, emCoverage } from './em-budget';
@@ -25,8 +24,7 @@ function linesOf(point: RatioPoint, group: BudgetLine['group']): BudgetLine[] {
   const { em, gw } = point;
   const value = ratioOf(point);
   const light = group === 'computation' ? emComputation(em) : emCoverage(em);
-  const measuring = { recipe: energyRecipe, point: gw.point, store: gw.store, digits: gw.completed.waveform.significantDigits };
-  const waves = radiationBudget(measuring, gw.outcome).filter((line) => line.group === group && !SHARED.has(line.id));
+  const waves = gw.budget().filter((line) => line.group === group && !SHARED.has(line.id));
   return [...carried(light, emEnergyA(em), value, 'electromagnetic'), ...carried(waves, gw.outcome.value, value, 'gravitational')];
 }
 
