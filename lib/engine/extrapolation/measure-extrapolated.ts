@@ -6,7 +6,7 @@ import { usedSettings } from '../tones/used-rows';
 import { limitByWeights, orderByNewton } from './order-by-newton';
 import { orderOfValues, richardsonValue, type OfThree, type Spacings } from './richardson';
 import type { Meter, RunScalar } from './run-scalar';
-import { chosenLines, otherRespectLine, propagatedLines, sensitivities } from './series-budget';
+import { chosenLines, differsBeyondRounding, otherRespectLine, propagatedLines, sensitivities } from './series-budget';
 import { approachFigure } from './series-figures';
 import { foundInRuns, named, noOrder, short, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
@@ -83,9 +83,10 @@ function reasonOf(values: readonly number[], spacings: readonly number[]): strin
 
 function carried({ request, leader, meter, observable, unit, formalOrder, names, spacings, read, spaced }: Carried): Measurement {
   const values = read.map(({ A }) => A);
-  const measured = measuredOrder(values, spacings);
+  const differs = differsBeyondRounding(read);
+  const measured = differs ? measuredOrder(values, spacings) : null;
   const order = formalOrder ?? measured;
-  if (order === null) return stopped([noOrder(names, `The values ${values.map((x) => short(x, 8)).join(', ')} of ${observable} of ${names} ${reasonOf(values, spacings)}.`, 'Declare formalOrder, or supply runs whose differences shrink with the spacing.'), ...spaced]);
+  if (order === null) return stopped([noOrder(names, `The values ${values.map((x) => short(x, 8)).join(', ')} of ${observable} of ${names} ${differs ? reasonOf(values, spacings) : 'do not differ by more than their rounding'}.`, 'Declare formalOrder, or supply runs whose differences shrink with the spacing.'), ...spaced]);
   const [hMiddle, hFinest] = spacings.slice(-2) as [number, number];
   const limitAt = (x: readonly number[]): number => richardsonValue(x.at(-2)!, x.at(-1)!, hMiddle, hFinest, formalOrder ?? measuredOrder(x, spacings) ?? Number.NaN);
   const value = limitAt(values);

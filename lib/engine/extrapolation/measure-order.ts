@@ -3,6 +3,7 @@ import type { Finding } from '../contract/finding';
 import type { BudgetLine, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
 import type { Observable } from '../contract/settings';
+import { err } from '@/lib/kernel/result';
 import { stop } from '../tones/measure-tones';
 import { floorRows, usedSettings } from '../tones/used-rows';
 import { curveNamed, curvesByRouteA, differencesOf, orderByRouteB, ordersOf, pointwiseOrders, slipOf, soundOrder, type Interval, type ThreeRuns } from './curve-orders';
@@ -12,7 +13,7 @@ import { orderByNewton } from './order-by-newton';
 import { orderOfValues, richardsonValue, type OfThree, type Spacings } from './richardson';
 import type { Curve } from './run-curves';
 import type { Run } from './runs';
-import { propagatedLines, sensitivities } from './series-budget';
+import { differsBeyondRounding, floorLines, propagatedLines, sensitivities } from './series-budget';
 import { approachFigure, convergenceFigures, curveUnit } from './series-figures';
 import { foundInRuns, named, noOrder, short, spreadFindings, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
@@ -42,10 +43,11 @@ const isCurve = (observable: Observable): observable is 'dominant' | Curve => ['
 
 const curveFindings = (followed: Followed): Finding[] => foundInRuns(followed.runs.map((run) => ({ name: run.waveform.name, findings: runFindings(run, followed) })));
 
-/** Order of the next coarser three runs, by route A: null where they have none, undefined where there are not as many. */
-function orderBefore({ all }: SpacedRuns, request: MeasureRequest, curve: Curve): number | null | undefined {
-  if (all.length < 4) return undefined;
-  const runs = all.slice(-4, -1);
+/** Order of the next coarser three runs: null where they have none, undefined where there are not as many. */
+const orderBefore = ({ all }: SpacedRuns, request: MeasureRequest, curve: Curve): number | null | undefined => (all.length < 4 ? undefined : orderAgain(all.slice(-4, -1), request, curve));
+
+/** The order of three runs by route A, under other circumstances than the claim's. */
+function orderAgain(runs: readonly Run[], request: MeasureRequest, curve: Curve): number | null {
   const followed = followRuns(waveformsOfRuns(runs), runs[2]!.waveform, request.settings);
   if ('code' in followed) return null;
   const interval = intervalOf(followed.runs, request);
@@ -76,7 +78,7 @@ function ofCurves(spaced: SpacedRuns, observable: 'dominant' | Curve, request: M
   const { mode, severalModes, floor } = followed;
   const budget = (): readonly BudgetLine[] => {
     step('uncertainty');
-    return [...orderComputation(of), fourthRunLine(order, orderBefore(spaced, request, curve)), intervalLine(of)];
+    return [...orderComputation(of), fourthRunLine(order, orderBefore(spaced, request, curve)), ...floorLines(floor, order, (other) => orderAgain(runs, { ...request, settings: { ...request.settings, integrationFloor: other } }, curve)), intervalLine(of)];
   };
   return measurementOf(
     {
@@ -135,7 +137,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
   const spacings = spacingsOf(runs);
   const values = valuesA(read);
   const seen = [...spaced.findings, ...foundInRuns(read.map(({ findings }, i) => ({ name: runs[i]!.waveform.name, findings })))];
-  const found = orderOfValues(values, spacings);
+  const found = differsBeyondRounding(read) ? orderOfValues(values, spacings) : err('do not differ by more than their rounding');
   if (!found.ok) return stopped([because(runs, `The values ${values.map((x) => short(x, 8)).join(', ')} of ${observable}`, found.error), ...seen]);
   const order = found.value;
   const [b1, b2, b3] = read.map(({ B }) => B) as [number, number, number];

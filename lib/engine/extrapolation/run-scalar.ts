@@ -8,6 +8,7 @@ import { recordFindings } from '../findings/record-findings';
 import { floorRows, usedSettings } from '../tones/used-rows';
 import { relativeSlip } from '../radiation/input-rounding';
 import { followRuns, type Followed, type FollowedRun } from './followed-runs';
+import { floorLines } from './series-budget';
 import { mirroredFindings } from './series-findings';
 import type { PeakBy } from '../tones/peak';
 import { atPeakOnSamples, atPeakOnSplines, turnOfPeak, type AtPeak } from './tone-at-peak';
@@ -112,6 +113,12 @@ export function meterAtPeak(which: PeakNumber, followed: Followed, request: Meas
   const { mode, severalModes, endM, floor } = followed;
   const read = ({ tones, peakTones, startM }: FollowedRun) => ({ A: atPeakOnSamples({ tone: tones.A, peakTone: peakTones.A, startM, endM }), B: () => atPeakOnSplines({ tone: tones.B, peakTone: peakTones.B, startM, endM }) });
   const outside = ({ waveform: { name }, startM }: FollowedRun, peakM: number): Finding => ({ code: 'engine/no-signal', level: 'stops-lodging', where: name, text: `The phase is counted from t = ${startM} M to the peak of ${name} at t = ${Number(peakM.toPrecision(6))} M, and the start does not lie before it in the record.`, fix: 'Give a startM inside every record, before the peak.' });
+  const again = (waveform: Waveform, more: DeclaredSettings = {}): number | null => {
+    const found = followRuns([waveform], waveform, { ...request.settings, ...(mode === null ? {} : { modes: [mode] }), ...more });
+    if ('code' in found) return null;
+    const value = read(found.runs[0]!).A[which];
+    return Number.isFinite(value) ? value : null;
+  };
   return {
     of: (waveform) => {
       const run = followed.runs.find((each) => each.waveform === waveform)!;
@@ -128,13 +135,8 @@ export function meterAtPeak(which: PeakNumber, followed: Followed, request: Meas
       const looks = request.routeAOnly === true;
       if (looks) return { A: A[which], B: Number.NaN, computation: [], coverage: [], findings: runFindings(run, followed), settings, assumed };
       const turned = turnedOf(run, endM, which);
-      return { A: A[which], B: B()[which], computation: computationOf(run, A, turned, which), turned, coverage: [], findings: runFindings(run, followed), settings, assumed };
+      return { A: A[which], B: B()[which], computation: computationOf(run, A, turned, which), turned, coverage: floorLines(floor, A[which], (other) => again(waveform, { integrationFloor: other })), findings: runFindings(run, followed), settings, assumed };
     },
-    looked: (waveform) => {
-      const again = followRuns([waveform], waveform, { ...request.settings, ...(mode === null ? {} : { modes: [mode] }) });
-      if ('code' in again) return null;
-      const value = read(again.runs[0]!).A[which];
-      return Number.isFinite(value) ? value : null;
-    },
+    looked: (waveform) => again(waveform),
   };
 }

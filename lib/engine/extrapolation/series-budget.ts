@@ -52,6 +52,40 @@ export function propagatedLines(made: Made, how: string): BudgetLine[] {
   });
 }
 
+/** E08: the floor times 0.7 and 1.4. */
+const FLOORS = [0.7, 1.4];
+
+/**
+ * What another integration floor would have made of a number.
+ * Shape:  one line; none where nothing was integrated.
+ * Units:  those of the number.
+ * Error:  an estimate.
+ * Fails:  null where no other floor gives a number.
+ * Source: domain reference 5.1.
+ */
+export function floorLines(floor: number | null, here: number, withFloor: (floor: number) => number | null): BudgetLine[] {
+  if (floor === null) return [];
+  const moved = FLOORS.map((by) => withFloor(floor * by)).flatMap((value) => (value === null ? [] : [Math.abs(value - here)]));
+  return [{ component: 'Integration floor', id: 'E08', group: 'coverage', u: moved.length === 0 ? null : Math.max(...moved) / ROOT3, note: `ω₀ = ${Number(floor.toPrecision(4))} rad/M times 0.7 and 1.4; half-width over √3.` }];
+}
+
+/** Differences have to stand out of the rounding by this factor. */
+const ABOVE_ROUNDING = 3;
+
+/**
+ * Do the two finest numbers differ by more than printed digits and doubles can tell?
+ * Shape:  one truth value for the runs, coarsest first.
+ * Units:  none.
+ * Error:  none: thresholds only.
+ * Fails:  never.
+ * Source: settings.md section 6 (orders are null where differences are rounding).
+ */
+export function differsBeyondRounding(scalars: readonly RunScalar[]): boolean {
+  const [middle, finest] = scalars.slice(-2) as [RunScalar, RunScalar];
+  const printed = [middle, finest].map(({ computation }) => computation.find(({ id }) => id === 'rounding')?.u ?? 0);
+  return Math.abs(middle.A - finest.A) > ABOVE_ROUNDING * (Math.hypot(...printed) + LEAST * Math.abs(finest.A));
+}
+
 /** Step of a numerical derivative, as a share of the smaller difference. */
 const SHARE = 1e-4;
 
@@ -65,7 +99,8 @@ const SHARE = 1e-4;
  */
 export function sensitivities(f: (values: readonly number[]) => number, values: readonly number[]): number[] {
   const gaps = values.slice(1).map((x, i) => Math.abs(x - values[i]!));
-  const step = SHARE * Math.min(...gaps);
+  // Runs that do not differ still carry their uncertainty on.
+  const step = SHARE * Math.min(...gaps) || 1e-6 * Math.max(...values.map(Math.abs)) || 1;
   const moved = (i: number, by: number): number => f(values.map((x, k) => (k === i ? x + by : x)));
   return values.map((_, i) => (moved(i, step) - moved(i, -step)) / (2 * step));
 }

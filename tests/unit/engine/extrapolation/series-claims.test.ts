@@ -40,6 +40,7 @@ describe('what stops an order', () => {
     ['a run that states no spacing', [three[0]!, three[1]!, runOf({ phaseRad: 0, amplitude: 0 }, { name: 'unknown' })], {}],
     ['runs that are the same but for their spacing', [80, 96, 112].map((n) => runOf({ phaseRad: 0, amplitude: 0 }, { name: `n${n}`, resolution: 1 / n })), {}],
     ['differences that grow', [80, 96, 112].map((n, i) => runOf({ phaseRad: [0, 0.1, 0.4][i]!, amplitude: 0 }, { name: `n${n}`, resolution: 1 / n })), {}],
+    ['numbers that differ by less than their printed digits', [80, 96, 112].map((n) => runOf({ phaseRad: 0, amplitude: 1e-6 * (80 / n) ** 4 }, { name: `n${n}`, resolution: 1 / n, significantDigits: 6 })), { observable: 'radiated-energy' }],
     ['numbers that go to and fro', [80, 96, 112].map((n, i) => runOf({ phaseRad: [0, 0.2, 0.1][i]!, amplitude: 0 }, { name: `n${n}`, resolution: 1 / n })), { observable: 'phase-at-peak' }],
   ])('%s', (_, series, settings) => {
     expect(value(convergenceOrder, series, settings)).toBeNull();
@@ -72,6 +73,12 @@ describe('what an order and a limit ask about', () => {
     expect(components!.errorEstimate).toAgreeWith(3 * Math.abs(limit! - components!.finest!), 1e-12);
     expect(extrapolatedValue.required({ of: { series: three.slice(1) }, noise: null }, {}, null)).toEqual(['formalOrder']);
     expect(extrapolatedValue.required({ of: { series: three }, noise: null }, {}, null)).toEqual([]);
+  });
+  it('nothing of two runs that do not differ, whose limit is their own number', () => {
+    const same = [96, 112].map((n) => runOf({ phaseRad: 0, amplitude: 0 }, { name: `n${n}`, resolution: 1 / n }));
+    const [point] = measureSeries(extrapolatedValue, same, { observable: 'amplitude-at-peak', formalOrder: 4 }).points;
+    expect(point!.value).toAgreeWith(0.3270350226016691, 1e-9);
+    expect(point!.expandedUncertainty).toBeGreaterThan(0);
   });
   it('radii: four of them, over a factor two, and never fewer than the degree and two', () => {
     const at = (radii: readonly number[]) => radii.map((r) => atRadius(r, r));
