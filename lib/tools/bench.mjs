@@ -7,10 +7,21 @@ import { report } from './setup/ground.mjs';
 
 const PYTHON = '/usr/bin/python3';
 const hasScipy = () => spawnSync(PYTHON, ['-c', 'import numpy, scipy'], { stdio: 'ignore' }).status === 0;
+const hasH5py = () => spawnSync(PYTHON, ['-c', 'import h5py'], { stdio: 'ignore' }).status === 0;
+
+/** One row needs it; the others do not wait for it. */
+function tryForHdf5() {
+  try {
+    installFromDebian(['python3-h5py'], 'h5py (for the row on HDF5)');
+  } catch (error) {
+    report(error);
+  }
+}
 
 try {
   await ensureDependencies();
   if (!hasScipy()) installFromDebian(['python3-scipy'], 'scipy (for the reference script)');
+  if (!hasH5py()) tryForHdf5();
   await runStep(process.execPath, ['--import', 'tsx', 'tests/bench/run.ts', ...process.argv.slice(2)]);
 } catch (error) {
   report(error);

@@ -84,6 +84,35 @@ def parse(path):
     return {"seconds": time.perf_counter() - started, "cpuSeconds": time.process_time() - spent, "sum": float(table.sum())}
 
 
+def write_arrays(npy, h5, rows, modes):
+    """False where h5py is not there to write with."""
+    table = np.random.default_rng(1).standard_normal((rows, 3))
+    np.save(npy, table)
+    try:
+        import h5py
+    except ImportError:
+        return {"written": False}
+    with h5py.File(h5, "w") as file:
+        for mode in range(modes):
+            file[f"mode{mode}"] = table + mode
+    return {"written": True}
+
+
+def load(read):
+    """Columns of their own, as a computation takes them; the sum of their last numbers tells that they were read."""
+    started, spent = time.perf_counter(), time.process_time()
+    total = sum(float(np.ascontiguousarray(column)[-1]) for table in read() for column in table.T)
+    return {"seconds": time.perf_counter() - started, "cpuSeconds": time.process_time() - spent, "sum": total}
+
+
+def hdf5_tables(path, modes):
+    import h5py
+
+    with h5py.File(path, "r") as file:
+        for mode in range(modes):
+            yield file[f"mode{mode}"][()]
+
+
 for line in sys.stdin:
     request = json.loads(line)
     if request["do"] == "sweep":
@@ -92,6 +121,12 @@ for line in sys.stdin:
         answer = bank(request["path"], request["lengths"], request["mass"], request["factors"], request["fLowHz"], request["fHighHz"])
     elif request["do"] == "parse":
         answer = parse(request["path"])
+    elif request["do"] == "write-arrays":
+        answer = write_arrays(request["npy"], request["h5"], request["rows"], request["modes"])
+    elif request["do"] == "load-npy":
+        answer = load(lambda: [np.load(request["npy"])])
+    elif request["do"] == "load-hdf5":
+        answer = load(lambda: hdf5_tables(request["h5"], request["modes"]))
     else:
         answer = {"python": sys.version.split()[0], "numpy": np.__version__, "scipy": scipy.__version__}
     print(json.dumps(answer), flush=True)

@@ -12,6 +12,7 @@ import type { Waveform } from '@/lib/engine/contract/waveform';
 import { createRouteA } from '@/lib/engine/routes/a/route-a';
 import { ENGINE_VERSION } from '@/lib/engine/version';
 import { bankSide, fittingFactor, makeBank, massFactors, signalMassMsun, type Bank } from './bank';
+import { benchArrays } from './arrays';
 import { errorBarCost } from './error-bar';
 import { parseTable, writeTable } from './parse';
 import { openReference, type Reference } from './reference';
@@ -126,10 +127,11 @@ try {
   const rows = await benchSweep(pair, reference, folder);
   const errorBar = await benchErrorBar(pair);
   rows.push(await benchBank(reference, folder));
-  rows.push(await benchParse(reference, folder));
+  const arrays = await benchArrays(reference, folder);
+  rows.push(await benchParse(reference, folder), ...arrays.rows);
   const commit = execFileSync('git', ['rev-parse', '--short', 'HEAD'], { encoding: 'utf8' }).trim();
   const machine = `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.versions.node}, engine ${ENGINE_VERSION} (${commit}), Python ${versions.python}, numpy ${versions.numpy}, scipy ${versions.scipy}`;
-  writeReport({ rows, errorBar, machine, date: new Date().toISOString().slice(0, 10) });
+  writeReport({ rows, skipped: arrays.skipped, errorBar, machine, date: new Date().toISOString().slice(0, 10) });
 } finally {
   reference.close();
   rmSync(folder, { recursive: true, force: true });

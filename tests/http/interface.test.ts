@@ -1,5 +1,6 @@
 import { BlobWriter, TextReader, ZipWriter } from '@zip.js/zip.js';
 import { createHash, randomUUID } from 'node:crypto';
+import { readFileSync } from 'node:fs';
 import { Readable } from 'node:stream';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { OPERATIONS } from '@/lib/http/contract/operations';
@@ -7,6 +8,7 @@ import { scopesOfDoor } from '@/lib/http/token-scope';
 import { DOORS } from '@/lib/policy/doors';
 import { REVIEW_DOORS } from '@/lib/policy/review-doors';
 import { addFile } from '@/lib/services/files/add-file';
+import type { StructureView } from '@/lib/services/files/structure-schema';
 import { TOKEN_SCOPES } from '@/lib/policy/token-scopes';
 import { askDoor, bearer, contractOf, loadHandlers, session, signedIn, tokenFor, type Ask, type DoorName, type Person } from '../support/interface-desk';
 import { burstFiles, burstSheet } from '../support/burst-sheet';
@@ -419,6 +421,12 @@ describe('every other answer fits its schema', () => {
     expect((await asAuthor('GET /api/v1/submissions/{id}/figures', { search: `?run=${run?.id}` })).status).toBe(200);
     const { revision } = await read<{ revision: { files: { id: string }[] } }>(asAuthor('GET /api/v1/submissions/{id}'));
     expect((await asAuthor('GET /api/v1/submissions/{id}/files/{fileId}', { params: { id: draft, fileId: revision.files[0]?.id ?? '' } })).status).toBe(200);
+    const arrays = new FormData();
+    arrays.append('file', new Blob([readFileSync('tests/unit/formats/fixtures/layouts.h5')]), 'layouts.h5');
+    const [stored] = await read<{ id: string }[]>(asAuthor('POST /api/v1/submissions/{id}/files', { raw: arrays }));
+    const held = await read<StructureView>(asAuthor('GET /api/v1/submissions/{id}/files/{fileId}/structure', { params: { id: draft, fileId: stored?.id ?? '' } }));
+    expect(held.entries.find(({ path }) => path === '/R0100/l2_m2')).toMatchObject({ shape: [40, 3], refusal: null });
+    expect((await asAuthor('GET /api/v1/submissions/{id}/files/{fileId}/structure', { params: { id: draft, fileId: revision.files[0]?.id ?? '' } })).status).toBe(422);
     const long = Buffer.from('1 2\n3 4\n');
     const announced = { name: 'long.txt', bytes: long.length, sha256: createHash('sha256').update(long).digest('hex') };
     const begun = async () => (await read<{ upload: { id: string } }>(asAuthor('POST /api/v1/submissions/{id}/uploads', { json: announced }))).upload.id;

@@ -37,10 +37,13 @@ export class Scatter {
   /** Whole elements only. */
   push(bytes: Uint8Array): void {
     const count = Math.min(this.total - this.done, Math.floor(bytes.length / this.type.size));
+    const numbers = this.doublesIn(bytes);
+    const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
     let from = 0;
     while (from < count) {
       const run = this.run(count - from);
-      this.copy(bytes, from, run);
+      if (numbers) this.copyDoubles(numbers, from, run);
+      else this.copy(view, from, run);
       from += run;
       this.advance(run);
     }
@@ -55,11 +58,12 @@ export class Scatter {
     return this.last < 0 ? 1 : Math.min(most, this.shape[this.last]! - this.index[this.last]!);
   }
 
-  private copy(bytes: Uint8Array, from: number, run: number): void {
-    const { type, out, walk } = this;
-    const stride = this.last < 0 ? 0 : this.strides[this.last]!;
-    if (this.copyDoubles(bytes, from, run, stride)) return;
-    const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
+  private get stride(): number {
+    return this.last < 0 ? 0 : this.strides[this.last]!;
+  }
+
+  private copy(view: DataView, from: number, run: number): void {
+    const { type, out, walk, stride } = this;
     const read = readerOf(type);
     let to = this.at;
     let at = from * type.size;
@@ -69,12 +73,16 @@ export class Scatter {
     }
   }
 
-  /** The usual case without a call for each number: doubles of this machine's order on their boundaries. */
-  private copyDoubles(bytes: Uint8Array, from: number, run: number, stride: number): boolean {
+  /** The usual case: doubles of this machine's order on their boundaries need no call for each number. */
+  private doublesIn(bytes: Uint8Array): Float64Array | null {
     const { base, littleEndian, size, firstAt, secondAt } = this.type;
-    if (base !== 'f8' || !littleEndian || !hostIsLittle || (size | firstAt | (secondAt ?? 0) | bytes.byteOffset) % 8 !== 0) return false;
-    const numbers = new Float64Array(bytes.buffer, bytes.byteOffset, bytes.byteLength >> 3);
-    const { out } = this;
+    if (base !== 'f8' || !littleEndian || !hostIsLittle || (size | firstAt | (secondAt ?? 0) | bytes.byteOffset) % 8 !== 0) return null;
+    return new Float64Array(bytes.buffer, bytes.byteOffset, bytes.byteLength >> 3);
+  }
+
+  private copyDoubles(numbers: Float64Array, from: number, run: number): void {
+    const { out, stride } = this;
+    const { size, firstAt, secondAt } = this.type;
     const step = size >> 3;
     let at = (from * size + firstAt) >> 3;
     let to = this.at;
@@ -87,7 +95,6 @@ export class Scatter {
         out[to + imaginary] = numbers[at + second]!;
       }
     }
-    return true;
   }
 
   private advance(run: number): void {
