@@ -7,15 +7,15 @@ const ringingRequest: SynthesisRequest = { massRatio: 1, chi1z: 0, chi2z: 0, mOm
 const samplesLeftOut = 3400;
 
 /** Points per unit of length. */
-const grids = [80, 96, 112] as const;
-const names = ['low', 'medium', 'high'] as const;
+const finest = 112;
+const grids = [{ name: 'low', n: 80 }, { name: 'medium', n: 96 }, { name: 'high', n: finest }] as const;
 
 /** Phase at the peak by which a grid of n points is off, in rad: a part of fourth order and one that is hardly of first. */
 const phaseOff = (n: number): number => 0.35 * (80 / n) ** 4 + 0.55 * (80 / n) ** 1.2;
 
 export function unconvergedPhase(): SpecimenFile[] {
   const exact = withoutStart(synthesise(ringingRequest), samplesLeftOut);
-  const runs = grids.map((n, i) => ({ name: names[i]!, n, wave: withResolutionError(exact, { phaseRad: phaseOff(n), amplitude: 0 }, peakTime(exact)) }));
+  const runs = grids.map(({ name, n }) => ({ name, n, wave: withResolutionError(exact, { phaseRad: phaseOff(n), amplitude: 0 }, peakTime(exact)) }));
   const statement = [
     'Saltern Institute of Strong Gravity, code *Gridlark*.',
     '',
@@ -41,7 +41,8 @@ export function unconvergedPhase(): SpecimenFile[] {
 
 const mergerRequest: SynthesisRequest = { massRatio: 2, chi1z: 0, chi2z: 0, mOmega0: 0.028, stepM: 0.44, modes: ['22', '21', '33', '44'] };
 const burstOverM = 150;
-const radii = [60, 100, 150, 200] as const;
+const nearer = [60, 100, 150] as const;
+const farthest = 200;
 
 /** What is 10⁻³ on the coarsest grid falls with the fourth power of the spacing. */
 const small = (n: number): number => 1e-3 * (80 / n) ** 4;
@@ -49,9 +50,8 @@ const small = (n: number): number => 1e-3 * (80 / n) ** 4;
 export function remnantByBalance(): SpecimenFile[] {
   const exact = withStartUpBurst(synthesise(mergerRequest));
   const onGrid = (n: number) => withResolutionError(exact, { phaseRad: small(n), amplitude: small(n) }, peakTime(exact));
-  const farthest = radii[radii.length - 1]!;
-  const atGrids = grids.map((n, i) => ({ name: names[i]!, n, radius: farthest as number, wave: withFiniteRadius(onGrid(n), farthest) }));
-  const atRadii = radii.slice(0, -1).map((radius) => ({ name: `high-r${radius}`, n: grids[2] as number, radius: radius as number, wave: withFiniteRadius(onGrid(grids[2]), radius) }));
+  const atGrids = grids.map(({ name, n }) => ({ name: name as string, n: n as number, radius: farthest as number, wave: withFiniteRadius(onGrid(n), farthest) }));
+  const atRadii = nearer.map((radius) => ({ name: `high-r${radius}`, n: finest as number, radius: radius as number, wave: withFiniteRadius(onGrid(finest), radius) }));
   const runs = [...atGrids, ...atRadii];
   const statement = [
     'Larkfield Wave Group, code *Tinderbox*.',
