@@ -13,6 +13,11 @@ export const furtherRows: readonly CatalogueRow[] = [
     advice: 'Supply the record around its peak, or declare an earlier startM.',
   },
   {
+    code: 'engine/mass-ratio-assumed', numbers: [], part: 'sampling', levels: look, concerns: 'detectable fraction',
+    rule: 'No signal states its mass ratio; over the plane of spins equal masses are assumed.',
+    advice: 'Give binary.massRatio beside the signals.',
+  },
+  {
     code: 'engine/join-in-taper', numbers: [], part: 'sampling', levels: look, concerns: 'hybrid loudness',
     rule: 'The join lies below the frequency at which the numerical signal has come in fully.',
     advice: 'Join at a higher frequency, or attach a waveform that starts earlier.',
@@ -104,6 +109,9 @@ export const furtherRows: readonly CatalogueRow[] = [
   },
   stop('engine/no-signal', 'all', 'There is nothing to compute from: no signal in the modes, along the line of sight, in the band or in the window of the claim.', 'Check modes, response, line of sight, band and window.'),
   stop('engine/too-few-points', 'detectors; detectable fraction', 'A record has fewer than 16 samples, or fewer than 5 signals stand for a family.', 'Attach more.'),
+  stop('engine/unequal-spins', 'detectable fraction', 'The two spins of a signal differ, or are not stated.', 'List signals with equal spins.'),
+  stop('engine/same-spin-twice', 'detectable fraction', 'Two signals have the same spin.', 'Leave one of them out.'),
+  stop('engine/mass-ratios-differ', 'detectable fraction', 'Over the plane of spins, the signals have different mass ratios.', 'List signals of one mass ratio, or declare weight: diagonal.'),
   stop('engine/curve-already-averaged', 'loudness', 'An average over the sky is asked for on a curve that contains it.', 'Leave out "average", or name a curve of the instrument alone.'),
   stop('engine/average-needs-modes', 'loudness', 'An average over orientations is asked for of a strain along one line of sight.', 'Attach the modes, or claim the average "sky".'),
   stop('engine/no-horizon', 'horizons', 'Between z = 0.001 and 50 the loudness does not cross the threshold.', 'Check mass, threshold and band.'),
