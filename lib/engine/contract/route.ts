@@ -63,6 +63,8 @@ export interface MatchRequest {
   readonly response: Response;
   readonly maximise: readonly MaximiseOver[];
   readonly templateMassRange: readonly [number, number];
+  /** A shift on whose hill the maximum is known to lie, where nothing but shift and turn are free. */
+  readonly nearShiftS?: number;
   /** Rebuilds b at a factor of its mass, for templateMass. */
   readonly rescale: (b: Side, factor: number) => Side;
 }

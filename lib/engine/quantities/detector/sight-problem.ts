@@ -38,7 +38,7 @@ export function settledMatch(route: DetectorRoute, request: MatchRequest, sight:
   const b = at.massFactor === undefined ? request.b : request.rescale(request.b, at.massFactor);
   const held = new Set(['inclination', 'templateMass', ...(turnsByAzimuth(request) ? ['phase'] : [])]);
   const maximise = request.maximise.filter((what) => !held.has(what));
-  return route.match({ ...request, a: seenFrom(request.a, sight), b: seenFrom(b, at.b), maximise }).match;
+  return route.match({ ...request, a: seenFrom(request.a, sight), b: seenFrom(b, at.b), maximise, nearShiftS: at.timeShiftS }).match;
 }
 
 export interface SightProblem {

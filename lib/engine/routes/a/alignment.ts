@@ -1,7 +1,7 @@
 import type { MaximiseOver, Response } from '@/lib/engine/contract/settings';
 import type { BinWeights } from './bin-weights';
 import { channelsOf, crossSpectrum, type Channel } from './cross-spectrum';
-import { evaluateAt, findLag, type LagPeak, type Objective } from './lag-search';
+import { evaluateAt, findLag, hillAt, type LagPeak, type Objective } from './lag-search';
 import type { Spectrum } from './spectrum';
 
 /** How b may be moved against a once its own shape is fixed. */
@@ -45,17 +45,18 @@ export interface Pair {
 
 /**
  * The largest normalised product of a and b under the given freedom.
- * Shape:  two spectra on common bins.
+ * Shape:  two spectra on common bins; the hill at `nearShiftS` where one is named, else the highest.
  * Units:  dimensionless.
  * Error:  see `findLag`.
  * Fails:  value NaN when either norm is not positive.
  * Source: settings.md rule 2.7.
  */
-export function align(pair: Pair, freedom: Freedom): Alignment {
+export function align(pair: Pair, freedom: Freedom, nearShiftS?: number): Alignment {
   const { a, b, weights } = pair;
   const c = crossSpectrum(a, b, freedom.response, weights);
   const objective: Objective = freedom.turn ? 'modulus' : 'real';
-  const peak = freedom.time ? findLag(c, objective, pair.lagStride) : unmoved(pair, c, objective);
+  const free = (): LagPeak => (nearShiftS === undefined ? findLag(c, objective, pair.lagStride) : hillAt(c, xOfShift(pair, nearShiftS), objective));
+  const peak = freedom.time ? free() : unmoved(pair, c, objective);
   const value = c.normA > 0 && c.normB > 0 ? peak.value / Math.sqrt(c.normA * c.normB) : Number.NaN;
   return { value, x: peak.x, turnRad: freedom.turn ? Math.atan2(peak.im, peak.re) : 0, norms: [c.normA, c.normB] };
 }

@@ -189,7 +189,7 @@ export class JointSearch {
   at(placement: Placement): JointOutcome {
     const { request, searched } = this;
     const pair = this.pairAt(placement);
-    const alignment = align(pair, freedomOf(request.response, request.maximise, request.b.waveform.content.kind === 'modes'));
+    const alignment = align(pair, freedomOf(request.response, request.maximise, request.b.waveform.content.kind === 'modes'), request.nearShiftS);
     const [low, high] = request.templateMassRange;
     const near = (bound: number): boolean => Math.abs(Math.log(placement.massFactor / bound)) < BOUND_SHARE;
     return { pair, alignment, placement, onBound: searched.mass && (near(low) || near(high)) };

@@ -1,5 +1,5 @@
-import type { BinWeights } from './bin-weights';
 import type { Element } from './sight-elements';
+import type { ThinnedWeights } from './thinned-weights';
 
 /** Products of all pairs of elements at the Chebyshev lags of one panel: interleaved re, im by [pair][node]. */
 export interface LagPanel {
@@ -29,13 +29,14 @@ export function interpolationWeights(y: number, into: Float64Array): void {
   for (let n = 0; n < NODES; n++) into[n] = into[n]! / total;
 }
 
-/** cos and sin of 2π(first + j)x, [bin][node], taken anew at every bin. */
-function turns(x: Float64Array, first: number, n: number): { cos: Float64Array; sin: Float64Array } {
+/** cos and sin of 2π·bin·x, [bin][node], taken anew at every bin. */
+function turns(x: Float64Array, bins: Int32Array): { cos: Float64Array; sin: Float64Array } {
+  const n = bins.length;
   const cos = new Float64Array(n * NODES);
   const sin = new Float64Array(n * NODES);
   for (let j = 0; j < n; j++) {
     for (let i = 0; i < NODES; i++) {
-      const cycles = (first + j) * x[i]!;
+      const cycles = bins[j]! * x[i]!;
       const angle = 2 * Math.PI * (cycles - Math.round(cycles));
       cos[j * NODES + i] = Math.cos(angle);
       sin[j * NODES + i] = Math.sin(angle);
@@ -44,7 +45,7 @@ function turns(x: Float64Array, first: number, n: number): { cos: Float64Array; 
   return { cos, sin };
 }
 
-/** Adds Σ_j q_j e^{2πi(first+j)x} at the nodes, or its conjugate, to `out`. */
+/** Adds Σ_j q_j e^{2πi·bin·x} at the nodes, or its conjugate, to `out`. */
 function addSums(re: Float64Array, im: Float64Array, cos: Float64Array, sin: Float64Array, conjugate: boolean, out: Float64Array, at: number): void {
   const sumRe = new Float64Array(NODES);
   const sumIm = new Float64Array(NODES);
@@ -71,10 +72,10 @@ function addSums(re: Float64Array, im: Float64Array, cos: Float64Array, sin: Flo
  * Fails:  never.
  * Source: ⟨a|b⟩ over both polarisations; Chebyshev interpolation, first barycentric form (from memory).
  */
-export function lagPanel(a: readonly Element[], b: readonly Element[], weights: BinWeights, middle: number, half: number): LagPanel {
-  const { first, values: v } = weights;
+export function lagPanel(a: readonly Element[], b: readonly Element[], weights: ThinnedWeights, middle: number, half: number): LagPanel {
+  const { bins, values: v } = weights;
   const n = v.length;
-  const { cos, sin } = turns(chebyshevPoints.map((y) => middle + half * y), first, n);
+  const { cos, sin } = turns(chebyshevPoints.map((y) => middle + half * y), bins);
   const values = new Float64Array(2 * a.length * b.length * NODES);
   const re = new Float64Array(n);
   const im = new Float64Array(n);
@@ -87,7 +88,7 @@ export function lagPanel(a: readonly Element[], b: readonly Element[], weights: 
       ] as const;
       for (const [ar, ai, br, bi, conjugate] of halves) {
         for (let i = 0; i < n; i++) {
-          const bin = first + i;
+          const bin = bins[i]!;
           re[i] = v[i]! * (ar[bin]! * br[bin]! + ai[bin]! * bi[bin]!);
           im[i] = v[i]! * (ai[bin]! * br[bin]! - ar[bin]! * bi[bin]!);
         }

@@ -292,3 +292,17 @@ export function findLag(c: CrossSpectrum, objective: Objective, stride: number):
   }
   return best ?? { x: 0, re: 0, im: 0, value: 0 };
 }
+
+/** The shift of the highest point of the core's grid and its height, for searches that climb later: hills of nearly one height are not told apart. */
+export function roughLag(c: CrossSpectrum, objective: Objective, stride: number): { readonly x: number; readonly height: number } {
+  if (c.n === 0) return { x: 0, height: 0 };
+  const step = c.n >= LEAST_STRIDED * stride ? stride : 1;
+  const grid = coarseGrid(c, coreOf(c), objective, step);
+  let top = 0;
+  for (let i = 1; i < grid.length; i++) if (grid[i]! > grid[top]!) top = i;
+  const height = objective === 'real' ? grid[top]! : Math.sqrt(Math.max(0, grid[top]!));
+  return { x: shiftsOf(top, grid.length, step)[0]!, height };
+}
+
+/** The top of the hill that a shift stands on. */
+export const hillAt = (c: CrossSpectrum, x: number, objective: Objective): LagPeak => climb(c, x, 1 / powerOfTwoFrom(4 * (c.first + c.n)), objective);

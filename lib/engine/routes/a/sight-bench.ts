@@ -1,6 +1,8 @@
 import type { SightRequest, Sight, Side } from '@/lib/engine/contract/route';
 import type { MaximiseOver } from '@/lib/engine/contract/settings';
-import { align, freedomOf, type Freedom } from './alignment';
+import { freedomOf, type Freedom } from './alignment';
+import { crossSpectrum } from './cross-spectrum';
+import { roughLag } from './lag-search';
 import type { BinWeights } from './bin-weights';
 import { lagPanel, type LagPanel } from './lag-panels';
 import { modeBank } from './mode-bank';
@@ -8,6 +10,7 @@ import type { Numerics } from './numerics';
 import { prepare } from './prepare';
 import { elementsOf, gramOfElements, type Element } from './sight-elements';
 import type { Spectrum } from './spectrum';
+import { marginOf, thinnedWeights, type ThinnedWeights } from './thinned-weights';
 import type { SpectrumStore } from './spectrum-store';
 
 export interface Weight {
@@ -41,10 +44,12 @@ export interface SightBench {
 const PLAN: Sight = { inclinationRad: 1, azimuthRad: 0.3 };
 /** Phase over half a panel, in rad, of the frequency below which all but a thousandth of the power lies. */
 const PANEL_PHASE = 5;
+/** The kept bins are this many times closer than the longest lag of the records needs. */
+const OVERSAMPLED = 4;
 const BULK = 0.999;
-const SEED_AZIMUTHS = [0.2, 1.9];
+const SEED_AZIMUTHS = [0.2];
 const SEED_INCLINATIONS = [0.4, 1.2];
-const SEED_TURNS = 8;
+const SEED_TURNS = 6;
 
 const seenFrom = (side: Side, sight: Sight): Side => ({ ...side, ...sight });
 
@@ -79,19 +84,19 @@ interface Laid {
   readonly b: readonly Element[];
   readonly weights: BinWeights;
   readonly lagStride: number;
-  readonly secondsPerUnit: readonly [number, number];
   readonly freedom: Freedom;
 }
 
 /** The lag of the best of a few turns of b, for a few sights: where later searches begin. */
-function hillsOf({ a, b, weights, lagStride, secondsPerUnit, freedom }: Laid, inclinationRad: number | null, azimuthFree: boolean): number[] {
+function hillsOf({ a, b, weights, lagStride, freedom }: Laid, inclinationRad: number | null, azimuthFree: boolean): number[] {
   const sights = (inclinationRad === null ? SEED_INCLINATIONS : [inclinationRad]).flatMap((ι) => SEED_AZIMUTHS.map((azimuthRad) => ({ inclinationRad: ι, azimuthRad })));
   return sights.map((sight) => {
     const whole = sumOf(a, sight, weights);
     const turns = azimuthFree ? Array.from({ length: SEED_TURNS }, (_, i) => (i * Math.PI) / SEED_TURNS) : [0];
     const found = turns.map((turn) => {
-      const turned = sumOf(b, { ...sight, azimuthRad: sight.azimuthRad + turn }, weights);
-      return align({ a: whole, b: turned, weights, lagStride, secondsPerUnit }, freedom);
+      const c = crossSpectrum(whole, sumOf(b, { ...sight, azimuthRad: sight.azimuthRad + turn }, weights), 'complex', weights);
+      const { x, height } = roughLag(c, freedom.turn ? 'modulus' : 'real', lagStride);
+      return { x, value: height / Math.sqrt(c.normB) };
     });
     return found.reduce((p, q) => (q.value > p.value ? q : p)).x;
   });
@@ -101,7 +106,7 @@ function distinct(lags: readonly number[], apart: number): number[] {
   return lags.filter((x, i) => lags.slice(0, i).every((y) => Math.abs(x - y) > apart));
 }
 
-function panels(a: readonly Element[], b: readonly Element[], weights: BinWeights, half: number): (x: number) => LagPanel {
+function panels(a: readonly Element[], b: readonly Element[], weights: ThinnedWeights, half: number): (x: number) => LagPanel {
   const made = new Map<number, LagPanel>();
   return (x) => {
     const index = Math.floor(x / (2 * half));
@@ -109,6 +114,12 @@ function panels(a: readonly Element[], b: readonly Element[], weights: BinWeight
     made.set(index, known);
     return known;
   };
+}
+
+function thinned(weights: BinWeights, elements: readonly Element[], stride: number): ThinnedWeights {
+  const lowest = Math.max(...elements.map(({ spectrum }) => spectrum.firstBin));
+  const highest = Math.min(...elements.map(({ spectrum }) => spectrum.lastBin));
+  return thinnedWeights(weights, stride, lowest, highest);
 }
 
 const has = (maximise: readonly MaximiseOver[], what: MaximiseOver): boolean => maximise.includes(what);
@@ -127,6 +138,7 @@ export function sightBench(request: SightRequest, store: SpectrumStore, numerics
   const sides = [seenFrom(request.a, plan), seenFrom(request.b, plan)] as const;
   const prepared = prepare({ sides, band, absoluteTimes: !has(maximise, 'time') }, store, numerics);
   const { weights, dfHz, lagStride } = prepared;
+  const stride = Math.floor(lagStride / OVERSAMPLED);
   const modes = request.b.waveform.content.kind === 'modes';
   const inclinationFree = modes && has(maximise, 'inclination');
   const azimuthFree = modes && has(maximise, 'phase');
@@ -137,6 +149,7 @@ export function sightBench(request: SightRequest, store: SpectrumStore, numerics
       prepared.spectra[i]!,
       i === 1 && inclinationFree ? null : inclinationRad,
       weights,
+      marginOf(stride),
     ),
   ) as [Element[], Element[]];
   if (a.length === 0 || b.length === 0 || weights.values.length === 0) return null;
@@ -145,7 +158,7 @@ export function sightBench(request: SightRequest, store: SpectrumStore, numerics
   const { mean, bulk } = spread(sumOf(a, plan, weights), weights);
   const half = PANEL_PHASE / (2 * Math.PI * Math.max(bulk, 1));
   const unmovedX = (b[0]!.spectrum.referenceTime * secondsPerUnit[1] - a[0]!.spectrum.referenceTime * secondsPerUnit[0]) * dfHz;
-  const hills = freedom.time ? hillsOf({ a, b, weights, lagStride, secondsPerUnit, freedom }, inclinationRad, azimuthFree) : [unmovedX];
+  const hills = freedom.time ? hillsOf({ a, b, weights, lagStride, freedom }, inclinationRad, azimuthFree) : [unmovedX];
   return {
     a,
     b,
@@ -160,6 +173,6 @@ export function sightBench(request: SightRequest, store: SpectrumStore, numerics
     hills: distinct(hills, 0.25 / mean),
     half,
     halfCycle: 0.5 / mean,
-    panelAt: panels(a, b, weights, half),
+    panelAt: panels(a, b, thinned(weights, [...a, ...b], stride), half),
   };
 }

@@ -47,13 +47,13 @@ function withoutSilent(elements: readonly Element[], weights: BinWeights): Eleme
 
 /**
  * Splits a side into elements; a column along a line of sight is one element of weight 1.
- * Shape:  `bank` is empty for columns, and `line` is then used.
+ * Shape:  `bank` is empty for columns, and `line` is then used; bins up to `margin` outside the band are filled.
  * Units:  those of the spectra.
  * Error:  none; elements that are silent in the band are left out.
  * Fails:  never; a silent side gives no elements.
  * Source: h₊ − ih× = Σ H_lm ⁻²Y_lm(ι, φ) = Σ_m e^{imφ} Σ_l H_lm ⁻²Y_lm(ι, 0).
  */
-export function elementsOf(side: Side, bank: ModeBank, line: Spectrum, inclinationRad: number | null, weights: BinWeights): Element[] {
+export function elementsOf(side: Side, bank: ModeBank, line: Spectrum, inclinationRad: number | null, weights: BinWeights, margin: number): Element[] {
   const last = weights.first + weights.values.length - 1;
   if (side.waveform.content.kind !== 'modes') return [{ spectrum: line, weigh: () => ({ re: 1, im: 0 }) }];
   const elements =
@@ -61,7 +61,7 @@ export function elementsOf(side: Side, bank: ModeBank, line: Spectrum, inclinati
       ? bank.map(({ l, m, spectrum }): Element => ({ spectrum, weigh: (sight) => spinWeightedHarmonic(l, m, sight.inclinationRad, sight.azimuthRad) }))
       : bank.length === 0
         ? []
-        : sumsByM(bank, inclinationRad, weights.first, last);
+        : sumsByM(bank, inclinationRad, Math.max(bank[0]!.spectrum.firstBin, weights.first - margin), Math.min(bank[0]!.spectrum.lastBin, last + margin));
   return withoutSilent(elements, weights);
 }
 

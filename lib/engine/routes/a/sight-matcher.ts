@@ -11,6 +11,8 @@ const KEPT_STARTS = 3;
 /** Of the first steps: 1e-6 of a cycle and of a radian. */
 const TOLERANCE = 2e-5;
 const LAG_STEP = 0.06;
+/** Of half a cycle on either side of a hill: further away another azimuth of b does the same. */
+const SCANNED = 0.5;
 const AZIMUTH_STEP = Math.PI / 24;
 const INCLINATION_STEP = Math.PI / 36;
 
@@ -93,7 +95,7 @@ class Seen {
   scan(poses: readonly Pose[]): { point: Point; value: number }[] {
     const { hills, half, halfCycle, freedom } = this.bench;
     const found: { point: Point; value: number }[] = [];
-    const reach = Math.ceil(halfCycle / (2 * half));
+    const reach = Math.ceil((SCANNED * halfCycle) / (2 * half));
     const middles = new Set(hills.flatMap((x) => Array.from({ length: 2 * reach + 1 }, (_, i) => this.bench.panelAt(x + 2 * (i - reach) * half).middle)));
     const lags = freedom.time ? [...middles].flatMap((middle) => Array.from(chebyshevPoints, (y) => middle + half * y).filter((_, i) => i % 3 === 1)) : hills;
     for (const { sight } of poses) for (const x of lags) found.push({ point: { x, sight }, value: this.valueAt({ x, sight }) });

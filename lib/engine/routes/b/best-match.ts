@@ -115,7 +115,9 @@ function refine(search: Search, start: Tried, variables: readonly Variable[]): T
 
 function searchPoses(request: MatchRequest, search: Search): Tried {
   const variables = variablesOf(request, search.freedom);
-  const tried = startingPoses(request, search.freedom).map((pose) => tryPose(search, pose));
+  const { nearShiftS } = request;
+  const known = nearShiftS === undefined ? undefined : nearShiftS - search.a.source.centreS + search.posed(startingPoses(request, search.freedom)[0]!).source.centreS;
+  const tried = startingPoses(request, search.freedom).map((pose) => tryPose(search, pose, known));
   const ranked = [...tried].sort((p, q) => q.match - p.match);
   if (variables.length === 0) return ranked[0]!;
   // A lone azimuth is a ring: its hills are the starting points above both neighbours.

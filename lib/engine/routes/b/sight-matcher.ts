@@ -1,6 +1,8 @@
 import type { Side, Sight, SightMatch, SightMatcher, SightRequest } from '../../contract/route';
-import { bestMatch } from './best-match';
+import { bestShift, productsOf } from './best-shift';
+import { normSquared, type Channel } from './channels';
 import { goldenMaximum, simplexMaximum } from './climb-hill';
+import type { FrequencyNodes } from './frequency-panels';
 import { freedomOf, type Freedom } from './moving-side';
 import { nodesFor } from './shared-nodes';
 import { SERIES_PHASE, shiftSeries, TERMS, type ShiftSeries } from './shift-series';
@@ -14,8 +16,8 @@ const REFINED = 1e-6;
 const REFINED_STARTS = 3;
 /** Share of the power that decides how far a series reaches. */
 const BULK = 0.999;
-/** Shifts tried over one reach of a series, and reaches on either side of a start. */
-const TRIED_PER_REACH = 4;
+/** Shifts tried over one reach of a series, over six tenths of half a cycle on either side: beyond, another azimuth of b does the same. */
+const TRIED_PER_REACH = 3;
 
 interface Table {
   readonly a: readonly Element[];
@@ -23,8 +25,8 @@ interface Table {
   readonly formA: (c: readonly Complex[]) => number;
   readonly formB: (c: readonly Complex[]) => number;
   readonly freedom: Freedom;
-  /** Shifts, between the records' centres, from which searches start. */
-  readonly starts: readonly number[];
+  /** Shift, between the records' centres, around which searches start. */
+  readonly start: number;
   /** Shift between centres at which the files stand by their own times. */
   readonly unmoved: number;
   readonly reachS: number;
@@ -60,17 +62,42 @@ function spread(parts: readonly Element[], f: Float64Array, weight: Float64Array
   return { mean: power.reduce((total, p, k) => total + p * f[k]!, 0) / all, bulk: f[i]! };
 }
 
-const FIRST_INCLINATION = 1.1;
-const FIRST_AZIMUTHS = [0.5, 2.2];
+const FIRST: Sight = { inclinationRad: 1.1, azimuthRad: 0.5 };
+/** Turns of b by which the highest hill over all shifts is looked for. */
+const FIRST_TURNS = [0, 1, 2, 3].map((k) => (k * Math.PI) / 8);
 
-/** Best shifts of whole waveforms from two directions, over all shifts and azimuths: there the series begin. */
-function startingShifts(request: SightRequest, sourceOf: (side: Side) => Source, knobs: RouteBKnobs): number[] {
-  const { a, b, band, maximise, inclinationRad } = request;
-  return FIRST_AZIMUTHS.map((azimuthRad) => {
-    const sight = { inclinationRad: inclinationRad ?? FIRST_INCLINATION, azimuthRad };
-    const asked = { a: { ...a, ...sight }, b: { ...b, ...sight }, band, response: 'complex', maximise: maximise.filter((what) => what !== 'inclination'), templateMassRange: [1, 1], rescale: (side: Side) => side } as const;
-    return bestMatch(asked, sourceOf, knobs).timeShiftS;
+/** All parts along one direction, as channels. */
+function wholeFrom(parts: readonly Element[], sight: Sight): readonly Channel[] {
+  const n = parts[0]!.pRe.length;
+  const sums = Array.from({ length: 4 }, () => new Float64Array(n));
+  const [pRe, pIm, qRe, qIm] = sums as [Float64Array, Float64Array, Float64Array, Float64Array];
+  for (const part of parts) {
+    const [c, s] = part.weigh(sight);
+    for (let i = 0; i < n; i++) {
+      pRe[i] = pRe[i]! + c * part.pRe[i]! - s * part.pIm[i]!;
+      pIm[i] = pIm[i]! + c * part.pIm[i]! + s * part.pRe[i]!;
+      // q is a conjugate, and turns the other way.
+      qRe[i] = qRe[i]! + c * part.qRe[i]! + s * part.qIm[i]!;
+      qIm[i] = qIm[i]! + c * part.qIm[i]! - s * part.qRe[i]!;
+    }
+  }
+  return [
+    { prefactor: 2, turn: 1, re: pRe, im: pIm },
+    { prefactor: 2, turn: -1, re: qRe, im: qIm },
+  ];
+}
+
+/** The highest hill of whole waveforms over all shifts, for a few turns of b: there the series begin. */
+function startingShift(parts: readonly [readonly Element[], readonly Element[]], { f, weight }: FrequencyNodes, freedom: Freedom, inclinationRad: number, reachS: number): number {
+  const sight = { ...FIRST, inclinationRad };
+  const a = wholeFrom(parts[0], sight);
+  const turns = freedom.azimuth ? FIRST_TURNS : [0];
+  const peaks = turns.map((turn) => {
+    const b = wholeFrom(parts[1], { ...sight, azimuthRad: sight.azimuthRad + turn });
+    const peak = bestShift(productsOf(a, b, weight), f, reachS, freedom.turn ? 'modulus' : 'real');
+    return { ...peak, value: peak.value / Math.sqrt(normSquared(b, weight)) };
   });
+  return peaks.reduce((p, q) => (q.value > p.value ? q : p)).shiftS;
 }
 
 function tableOf(request: SightRequest, sourceOf: (side: Side) => Source, knobs: RouteBKnobs): Table | null {
@@ -78,12 +105,14 @@ function tableOf(request: SightRequest, sourceOf: (side: Side) => Source, knobs:
   const freedom = freedomOf({ a, b, band, response: 'complex', maximise: request.maximise, templateMassRange: [1, 1], rescale: (side) => side });
   const [sourceA, sourceB] = [sourceOf(a), sourceOf(b)];
   const unmoved = sourceB.centreS - sourceA.centreS;
-  const starts = freedom.time ? startingShifts(request, sourceOf, knobs).map((shiftS) => shiftS + unmoved) : [unmoved];
-  const nodes = nodesFor([sourceA, sourceB], band, knobs, { allModes: true, extraLagS: 1.01 * Math.max(...starts.map(Math.abs)) });
+  // A free shift reaches as far as the records overlap at all.
+  const extraLagS = freedom.time ? Math.min(sourceA.spanS, sourceB.spanS) : Math.abs(unmoved);
+  const nodes = nodesFor([sourceA, sourceB], band, knobs, { allModes: true, extraLagS });
   const { f, weight } = nodes;
   if (f.length === 0) return null;
   const parts = [partsOf(a, sourceA, f, weight, inclinationRad), partsOf(b, sourceB, f, weight, freedom.inclination ? null : inclinationRad)] as const;
   if (parts.some((list) => list.length === 0)) return null;
+  const start = freedom.time ? startingShift(parts, nodes, freedom, inclinationRad ?? FIRST.inclinationRad, (sourceA.spanS + sourceB.spanS) / 2) : unmoved;
   const { mean, bulk } = spread(parts[0], f, weight);
   const reachS = SERIES_PHASE / (2 * Math.PI * bulk);
   const made = new Map<number, ShiftSeries>();
@@ -94,7 +123,7 @@ function tableOf(request: SightRequest, sourceOf: (side: Side) => Source, knobs:
     return known;
   };
   const halfCycleS = 0.5 / mean;
-  return { a: parts[0], b: parts[1], formA: formOf(parts[0], weight), formB: formOf(parts[1], weight), freedom, starts: starts.filter((s, i) => starts.slice(0, i).every((t) => Math.abs(s - t) > halfCycleS / 2)), unmoved, reachS, halfCycleS, seriesAt };
+  return { a: parts[0], b: parts[1], formA: formOf(parts[0], weight), formB: formOf(parts[1], weight), freedom, start, unmoved, reachS, halfCycleS, seriesAt };
 }
 
 interface Tried {
@@ -181,11 +210,11 @@ function startingSights({ freedom }: Table, { inclinationRad, azimuthRad }: Sigh
   return inclinations.flatMap((ι) => azimuths.map((φ) => ({ inclinationRad: ι, azimuthRad: φ })));
 }
 
-function shiftsAround({ starts, reachS, halfCycleS, freedom }: Table): number[] {
-  if (!freedom.time) return [...starts];
+function shiftsAround({ start, reachS, halfCycleS, freedom }: Table): number[] {
+  if (!freedom.time) return [start];
   const step = reachS / TRIED_PER_REACH;
-  const n = Math.ceil(halfCycleS / step);
-  return starts.flatMap((s) => Array.from({ length: 2 * n + 1 }, (_, i) => s + (i - n) * step));
+  const n = Math.ceil((0.6 * halfCycleS) / step);
+  return Array.from({ length: 2 * n + 1 }, (_, i) => start + (i - n) * step);
 }
 
 const into = (x: number, low: number, high: number): number => Math.min(Math.max(x, low), high);
