@@ -54,7 +54,7 @@ export async function open(raw: Record<string, unknown>, openFile: OpenFile, rea
 /** Modes with their largest distance from the closed form, and how far the times are off. */
 export function modesAndErrors({ waveform, problems }: Opened): (readonly [string, number])[] {
   if (!waveform || waveform.content.kind !== 'modes') throw new Error(problems.join('\n') || 'no modes');
-  const far = (a: ArrayLike<number>, b: ArrayLike<number>): number => (a.length === b.length ? Math.max(...Array.from(a, (x, i) => Math.abs(x - b[i]!))) : Infinity);
+  const far = (a: ArrayLike<number>, b: ArrayLike<number>): number => (a.length === b.length ? Math.max(...Array.from(a, (x, i) => Math.abs(x - (b[i] ?? NaN)))) : Infinity);
   const times0 = far(waveform.axis, times);
   return waveform.content.modes.map(({ l, m, re, im }) => [`${l},${m}`, Math.max(times0, far(re, wave(l, m).re), far(im, wave(l, m).im))] as const);
 }

@@ -104,7 +104,7 @@ export function Composer(props: ComposerProps) {
         <div className="grid min-w-0 gap-10">
           <PartNav form={form} files={files.length} />
           <Part id="files" title="Files"><FilesPart id={id} files={files} uploads={props.uploads} usedBy={(name) => usersOf(form, name)} onGiven={give} importing={importing} /></Part>
-          <Part id="waveforms" title="Waveforms"><WaveformsPart form={form} files={names} /></Part>
+          <Part id="waveforms" title="Waveforms"><WaveformsPart id={id} form={form} stored={files} /></Part>
           <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} /><div className="mt-2"><FromEarlier id={id} form={form} files={files} put={put} /></div></Part>
           <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} verdicts={props.check?.current ? props.check.verdicts : []} /></Part>
           <Part id="preview" title="First look"><PreviewPart id={id} form={form} files={files} given={given} onGiven={give} /></Part>

@@ -4,6 +4,7 @@
  * opening and saving a sheet loses nothing.
  */
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
+import { hasDatasets } from './array-mapping';
 import { claimFromFields, fieldsFromClaim, type ClaimFields } from './claim-fields';
 
 type Json = Readonly<Record<string, unknown>>;
@@ -152,7 +153,10 @@ export function sheetFromFields(fields: ComposerFields): SheetParts {
   return { waveforms: named(fields.waveforms, waveformFromFields), noise: named(fields.noise, noiseFromFields), claims: fields.claims.map(claimFromFields) };
 }
 
-export const emptyWaveform = (name: string, file = ''): WaveformFields => ({ ...fieldsFromWaveform(name, {}), file, columns: file ? 't re22 im22' : '' });
+/** What a text file most often holds. */
+export const usualColumns = 't re22 im22';
+
+export const emptyWaveform = (name: string, file = ''): WaveformFields => ({ ...fieldsFromWaveform(name, {}), file, columns: file && !hasDatasets(file) ? usualColumns : '' });
 /** A declaration of a sheet under a name of this draft. */
 export const noiseNamed = (name: string, declaration: Json): NoiseFields => fieldsFromNoise(name, declaration);
 

@@ -40,7 +40,7 @@ export function FilesPart({ id, files, uploads, usedBy, onGiven, importing }: Fi
   return (
     <div className="grid gap-4">
       <div onDragOver={(e) => { e.preventDefault(); setOver(true); }} onDragLeave={() => setOver(false)} onDrop={drop} className={`grid justify-items-start gap-3 rounded border border-dashed px-5 py-5 ${over ? 'border-link bg-hover' : 'border-control bg-sheet'}`}>
-        <p className="max-w-measure">Drop waveforms and noise curves here: text tables, also gzipped. A folder with a <code>claim.json</code> fills all of this page.</p>
+        <p className="max-w-measure">Drop waveforms and noise curves here: text tables, also gzipped, or files of arrays (.h5, .npz, .npy). A folder with a <code>claim.json</code> fills all of this page.</p>
         <div className="flex flex-wrap gap-2">
           <Button tone="main" onClick={() => one.current?.click()}>Choose files</Button>
           <Button onClick={() => folder.current?.click()}>Choose a folder</Button>

@@ -17,7 +17,7 @@ export function countColumns(head: string): number {
 
 /** Reads a table in this browser, a chunk at a time, before anything is declared: what stands in each column is not known yet. */
 export async function previewFile(name: string, file: Blob): Promise<Preview> {
-  if (/\.(gz|zip|npz|npy|h5|hdf5)$/i.test(name)) return { ok: false, sentences: ['No preview of this kind of file. The check reads it on the server.'] };
+  if (/\.(gz|zip|npz|npy|h5|hdf5)$/i.test(name)) return { ok: false, sentences: ['No preview of this kind of file. Declare it as a waveform to see what it holds; the check reads it on the server.'] };
   const columns = countColumns(await file.slice(0, 1 << 16).text());
   if (columns < 2) return { ok: false, sentences: [`${name}: saw ${columns === 0 ? 'no line of numbers' : 'one column'}; expected a table with two columns or more.`] };
   const names = Array.from({ length: columns }, (_, i) => (i < 3 ? `column ${i + 1}` : '_'));

@@ -6,7 +6,10 @@ import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { EmptyState } from '@/app/_ui/primitives/page-state';
 import { say } from '@/app/_ui/primitives/toaster';
-import { emptyWaveform, type ComposerFields } from './fields';
+import type { FileView } from '@/lib/services/submissions/submission-view';
+import { hasDatasets, noMapping, withMapping } from './array-mapping';
+import { ArrayPart } from './array-part';
+import { emptyWaveform, usualColumns, type ComposerFields } from './fields';
 import { FileOptions } from './file-options';
 import { errorAt } from './form-error';
 
@@ -55,7 +58,22 @@ const layouts: readonly (readonly [string, string])[] = [
   ['t re22 im22', 'mode set: name each pair with its mode'],
 ];
 
-export function WaveformsPart({ form, files }: { readonly form: ComposerForm; readonly files: readonly string[] }) {
+/** Words that only files of the other kind have go with the file. */
+function fitToFile(form: ComposerForm, index: number): void {
+  const at = `waveforms.${index}` as const;
+  const { file, columns, rest } = form.getValues(at);
+  if (hasDatasets(file) && columns === usualColumns) form.setValue(`${at}.columns`, '', { shouldDirty: true });
+  if (!hasDatasets(file)) form.setValue(`${at}.rest`, withMapping(rest, noMapping), { shouldDirty: true });
+}
+
+interface WaveformsPartProps {
+  readonly id: string;
+  readonly form: ComposerForm;
+  readonly stored: readonly FileView[];
+}
+
+export function WaveformsPart({ id, form, stored }: WaveformsPartProps) {
+  const files = stored.map((f) => f.name);
   const rows = useFieldArray({ control: form.control, name: 'waveforms', keyName: 'key' });
   const add = () => rows.append(emptyWaveform(nextName(form.getValues('waveforms').map((w) => w.name)), files.find((f) => !form.getValues('waveforms').some((w) => w.file === f) && !form.getValues('noise').some((n) => n.file === f)) ?? ''));
   const remove = (index: number) => {
@@ -66,7 +84,7 @@ export function WaveformsPart({ form, files }: { readonly form: ComposerForm; re
   return (
     <div className="grid gap-4">
       {rows.fields.length === 0 && <EmptyState level={3} title="No waveform yet">Add a file above, then say here what stands in its columns.</EmptyState>}
-      {rows.fields.map((row, i) => <WaveformRow key={row.key} form={form} index={i} files={files} onRemove={() => remove(i)} />)}
+      {rows.fields.map((row, i) => <WaveformRow key={row.key} id={id} form={form} index={i} stored={stored} onRemove={() => remove(i)} />)}
       <div><Button onClick={add}>Declare a waveform</Button></div>
     </div>
   );
@@ -74,10 +92,11 @@ export function WaveformsPart({ form, files }: { readonly form: ComposerForm; re
 
 const nextName = (taken: readonly string[]): string => [...'ABCDEFGHJKLMNOPQRTUVWXYZ'].find((n) => !taken.includes(n)) ?? `W${taken.length + 1}`;
 
-function WaveformRow({ form, index, files, onRemove }: { readonly form: ComposerForm; readonly index: number; readonly files: readonly string[]; readonly onRemove: () => void }) {
+function WaveformRow({ id, form, index, stored, onRemove }: WaveformsPartProps & { readonly index: number; readonly onRemove: () => void }) {
   const { register, watch } = form;
   const at = `waveforms.${index}` as const;
   const { name, rest, file } = watch(at);
+  const arrays = hasDatasets(file);
   const several = typeof rest.files === 'object' && rest.files !== null ? Object.entries(rest.files as Record<string, string>) : [];
   return (
     <fieldset className="grid gap-3 rounded border border-hair-2 bg-sheet px-4 py-3">
@@ -87,10 +106,11 @@ function WaveformRow({ form, index, files, onRemove }: { readonly form: Composer
         {several.length > 0 ? (
           <p className="text-ui"><span className="block text-small font-semibold">Files, one a mode</span>{several.map(([mode, file]) => `(${mode}) ${file}`).join(', ')}</p>
         ) : (
-          <SelectField label="File" {...register(`${at}.file`)}><FileOptions files={files} chosen={file} /></SelectField>
+          <SelectField label="File" {...register(`${at}.file`, { onChange: () => fitToFile(form, index) })}><FileOptions files={stored.map((f) => f.name)} chosen={file} /></SelectField>
         )}
-        <TextField label="Columns, in order" list="layouts" autoComplete="off" spellCheck={false} hint="t or f first; _ skips one" {...register(`${at}.columns`)} />
+        <TextField label="Columns, in order" list="layouts" autoComplete="off" spellCheck={false} hint={arrays ? 'Of each dataset, where it has several; assumed: t re im' : 't or f first; _ skips one'} {...register(`${at}.columns`)} />
       </div>
+      {arrays && <ArrayPart key={file} submissionId={id} fileId={stored.find((f) => f.name === file)?.id ?? null} waveform={name} file={file} rest={rest} onRest={(next) => form.setValue(`${at}.rest`, next, { shouldDirty: true, shouldTouch: true })} />}
       <datalist id="layouts">{layouts.map(([value, words]) => <option key={value} value={value}>{words}</option>)}</datalist>
       <div className="grid gap-3 sm:grid-cols-3">
         {choices.map((c) => (
