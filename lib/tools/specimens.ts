@@ -6,6 +6,8 @@ import { formatModesText, modeColumns, watermark } from '@/lib/engine/synthesis/
 import { synthesise, type SynthesisRequest } from '@/lib/engine/synthesis/synthesise';
 import { binaryFacts, digits, modesFile, positive, sheet, waveform, withoutStart, type SpecimenFile } from './specimen-parts';
 import { nearlyCircular } from './specimens-of-orbits';
+import { spinBlindSearch } from './specimens-of-banks';
+import { allSides, longSignal } from './specimens-of-sights';
 import { remnantByBalance, unconvergedPhase } from './specimens-of-runs';
 
 /**
@@ -328,6 +330,9 @@ export const specimens: readonly Specimen[] = [
   { folder: 'nearly-circular', files: nearlyCircular },
   { folder: 'remnant-by-balance', files: remnantByBalance },
   { folder: 'unconverged-phase', files: unconvergedPhase },
+  { folder: 'long-signal', files: longSignal },
+  { folder: 'all-sides', files: allSides },
   { folder: 'electromagnetic-twin', files: electromagneticTwin },
   { folder: 'shaken-disc', files: shakenDisc },
+  { folder: 'spin-blind-search', files: spinBlindSearch },
 ];
