@@ -11,7 +11,7 @@ import { evenTimes, gaussian, modeFrom, modeSet, numberBy } from '../golden/ener
 
 const routes = ['A', 'B'] as const;
 const SOME = { numRuns: 25, seed: 11 };
-const FEW = { numRuns: 10, seed: 11 };
+const FEW = { numRuns: 5, seed: 11 };
 const between = (min: number, max: number) => fc.double({ min, max, noNaN: true });
 const spin = between(-1, 1);
 
