@@ -9,7 +9,7 @@ import type { Meter, RunScalar } from './run-scalar';
 import { chosenLines, differsBeyondRounding, otherRespectLine, propagatedLines, sensitivities } from './series-budget';
 import { approachFigure } from './series-figures';
 import { foundInRuns, named, noOrder, short, waveformsOfRuns } from './series-findings';
-import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
+import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, titleOf, type Scalars } from './series-measurement';
 import { areRuns, spacedRuns } from './spaced-runs';
 
 /** Grid-convergence practice: three runs that show an order, and anything less. */
@@ -59,7 +59,7 @@ export const measureExtrapolated =
     if (!isMeter(meter)) return stopped(meter);
     const read = readRuns(meter, runs, stepper(watch, runs.length));
     if (!areNumbers(read)) return stopped(read);
-    return carried({ request, leader, meter, observable, unit: unitOfObservable(observable), formalOrder, names: named(waveformsOfRuns(runs)), spacings: runs.map(({ place }) => place), read, spaced: [...findings, ...foundInRuns(read.map((run, i) => ({ name: runs[i]!.waveform.name, findings: run.findings })))] });
+    return carried({ request, leader, meter, observable, unit: unitOfObservable(observable), title: titleOf(observable, scalars), formalOrder, names: named(waveformsOfRuns(runs)), spacings: runs.map(({ place }) => place), read, spaced: [...findings, ...foundInRuns(read.map((run, i) => ({ name: runs[i]!.waveform.name, findings: run.findings })))] });
   };
 
 interface Carried {
@@ -68,6 +68,7 @@ interface Carried {
   readonly meter: Meter;
   readonly observable: string;
   readonly unit: string;
+  readonly title: string;
   readonly formalOrder: number | undefined;
   readonly names: string;
   readonly spacings: readonly number[];
@@ -81,7 +82,7 @@ function reasonOf(values: readonly number[], spacings: readonly number[]): strin
   return found === null || found.ok ? 'are two, which show no order' : found.error;
 }
 
-function carried({ request, leader, meter, observable, unit, formalOrder, names, spacings, read, spaced }: Carried): Measurement {
+function carried({ request, leader, meter, observable, unit, title, formalOrder, names, spacings, read, spaced }: Carried): Measurement {
   const values = read.map(({ A }) => A);
   const differs = differsBeyondRounding(read);
   const measured = differs ? measuredOrder(values, spacings) : null;
@@ -111,7 +112,7 @@ function carried({ request, leader, meter, observable, unit, formalOrder, names,
       used: { settings: [...own.settings, ...last.settings], assumed: [...own.assumed, ...last.assumed] },
       figures: () => [
         approachFigure({
-          title: `${observable} against the grid spacing, and its limit`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit, name: observable,
+          title: `${title} against the grid spacing, and its limit`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit,
           law: (h) => value + (finest - value) * (h / hFinest) ** order, lawName: `Limit plus a power ${short(order, 3)} of the spacing`, claimed: request.claimed[0] ?? null,
         }),
       ],

@@ -16,7 +16,7 @@ import type { Run } from './runs';
 import { differsBeyondRounding, floorLines, propagatedLines, sensitivities } from './series-budget';
 import { approachFigure, convergenceFigures, curveUnit } from './series-figures';
 import { foundInRuns, named, noOrder, short, spreadFindings, waveformsOfRuns } from './series-findings';
-import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
+import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, titleOf, type Scalars } from './series-measurement';
 import { areRuns, spacedRuns, type SpacedRuns } from './spaced-runs';
 import { runFindings, type RunScalar } from './run-scalar';
 
@@ -162,7 +162,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
       used: { settings: [...own.settings, ...last.settings], assumed: [...own.assumed, ...last.assumed] },
       figures: () => [
         approachFigure({
-          title: `${observable} against the grid spacing`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit, name: observable,
+          title: `${titleOf(observable, scalars)} against the grid spacing`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit,
           law: (h) => limit + (values[2] - limit) * (h / spacings[2]) ** order, lawName: `Limit plus a power ${short(order, 3)} of the spacing`, claimed: null,
         }),
       ],

@@ -11,7 +11,7 @@ import { isSamePlace, runsApart, type Run, type Runs } from './runs';
 import { chosenLines, otherRespectLine, propagatedLines } from './series-budget';
 import { approachFigure } from './series-figures';
 import { foundInRuns, leftOutFindings, named, radiusFindings, short, timeLabelFindings, waveformsOfRuns } from './series-findings';
-import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, type Scalars } from './series-measurement';
+import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, titleOf, type Scalars } from './series-measurement';
 
 const ROOT3 = Math.sqrt(3);
 
@@ -80,13 +80,14 @@ export const measureRadius =
     const read = readRuns(meter, runs, step);
     if (!areNumbers(read)) return stopped(read);
     const findings = [...leftOutFindings(apart, where), ...radiusFindings(runs, degree, where), ...timeLabelFindings(runs, readsTimes(request.settings, observable), where), ...foundInRuns(read.map((run, i) => ({ name: runs[i]!.waveform.name, findings: run.findings })))];
-    return fitted({ request, observable, unit: unitOfObservable(observable), degree, runs, read, meter, step, findings });
+    return fitted({ request, observable, unit: unitOfObservable(observable), title: titleOf(observable, scalars), degree, runs, read, meter, step, findings });
   };
 
 interface Fitted {
   readonly request: MeasureRequest;
   readonly observable: string;
   readonly unit: string;
+  readonly title: string;
   readonly degree: number;
   readonly runs: readonly Run[];
   readonly read: readonly RunScalar[];
@@ -104,7 +105,7 @@ function perturbative({ request, runs, meter, step }: Fitted): number | null {
 }
 
 function fitted(given: Fitted): Measurement {
-  const { request, observable, unit, degree, runs, read, meter, findings } = given;
+  const { request, observable, unit, title, degree, runs, read, meter, findings } = given;
   const radii = runs.map(({ place }) => place);
   const values = read.map(({ A }) => A);
   const fit = fitInInverseRadius(radii, values, degree);
@@ -132,7 +133,7 @@ function fitted(given: Fitted): Measurement {
         const law = (x: number): number => c.reduceRight((sum, coefficient) => sum * radii[0]! * x + coefficient, 0);
         return [
           approachFigure({
-            title: `${observable} against the inverse radius, and its limit`, x: { label: 'Inverse radius', unit: '1/M' }, places: radii.map((r) => 1 / r), values, unit, name: observable,
+            title: `${title} against the inverse radius, and its limit`, x: { label: 'Inverse radius', unit: '1/M' }, places: radii.map((r) => 1 / r), values, unit,
             law, lawName: `Polynomial of degree ${degree} in 1/r`, claimed: request.claimed[0] ?? null,
           }),
         ];

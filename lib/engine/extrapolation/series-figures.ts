@@ -36,7 +36,7 @@ export function convergenceFigures({ curves, curve, spacings, names: [c, m, f], 
   const unit = curveUnit[curve];
   const scaled = (by: number): number[] => picked.map((i) => fine[i]! * predictedRatio(by, spacings));
   const x = { label: 'Time', unit: 'M', scale: 'linear', values: picked.map((i) => curves.t[i]!) } as const;
-  const asClaimed: FigureSeries[] = claimed === null || !(claimed > 0) ? [] : [{ ...drawn, label: `${m} less ${f}, times ${spelt(predictedRatio(claimed, spacings))} for the claimed order ${spelt(claimed)}`, unit, role: 'claimed', values: scaled(claimed) }];
+  const asClaimed: FigureSeries[] = claimed === null || !(claimed > 0) ? [] : [{ ...drawn, label: `${m} less ${f}, × ${spelt(predictedRatio(claimed, spacings))} (order ${spelt(claimed)}, claimed)`, unit, role: 'claimed', values: scaled(claimed) }];
   const constant: FigureSeries[] = claimed === null ? [] : [{ ...drawn, label: 'Claimed order', unit: '', role: 'claimed', values: picked.map(() => claimed) }];
   return [
     {
@@ -45,7 +45,7 @@ export function convergenceFigures({ curves, curve, spacings, names: [c, m, f], 
       x,
       series: [
         { ...drawn, label: `${c} less ${m}`, unit, role: 'noise', values: picked.map((i) => coarse[i]!) },
-        { ...drawn, label: `${m} less ${f}, times ${spelt(predictedRatio(order, spacings))} for order ${spelt(order)}`, unit, role: 'recomputed', values: scaled(order) },
+        { ...drawn, label: `${m} less ${f}, × ${spelt(predictedRatio(order, spacings))} (order ${spelt(order)})`, unit, role: 'recomputed', values: scaled(order) },
         ...asClaimed,
       ],
     },
@@ -60,7 +60,6 @@ interface Approach {
   readonly places: readonly number[];
   readonly values: readonly number[];
   readonly unit: string;
-  readonly name: string;
   /** The law that is carried to zero. */
   readonly law: (x: number) => number;
   readonly lawName: string;
@@ -88,7 +87,7 @@ function joined(places: readonly number[], values: readonly number[], x: number)
  * Fails:  never.
  * Source: Q20, Q21.
  */
-export function approachFigure({ title, x, places, values, unit, name, law, lawName, claimed }: Approach): Figure {
+export function approachFigure({ title, x, places, values, unit, law, lawName, claimed }: Approach): Figure {
   const last = Math.max(...places);
   const grid = [...new Set([...Array.from({ length: POINTS + 1 }, (_, i) => (last * i) / POINTS), ...places])].sort((p, q) => p - q);
   const asClaimed: FigureSeries[] = claimed === null ? [] : [{ ...drawn, label: 'Claimed', unit, role: 'claimed', values: grid.map(() => claimed) }];
@@ -97,7 +96,7 @@ export function approachFigure({ title, x, places, values, unit, name, law, lawN
     title,
     x: { ...x, scale: 'linear', values: grid },
     series: [
-      { ...drawn, label: `${name} of each run, joined`, unit, role: 'noise', values: grid.map((at) => joined(places, values, at)) },
+      { ...drawn, label: 'Of each run, joined', unit, role: 'noise', values: grid.map((at) => joined(places, values, at)) },
       { ...drawn, label: lawName, unit, role: 'recomputed', values: grid.map(law) },
       ...asClaimed,
     ],

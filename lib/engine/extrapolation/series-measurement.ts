@@ -43,6 +43,9 @@ export function meterOf(observable: Observable, runs: readonly Run[], leader: Wa
   return [{ code: 'engine/no-signal', level: 'stops-lodging', where: request.claimId, text: `The observable ${observable} is not a number of one run.`, fix: `Declare one of ${['amplitude-at-peak', 'phase-at-peak', ...scalars.keys()].join(', ')}.` }];
 }
 
+/** What the observable is called in words. */
+export const titleOf = (observable: string, scalars: Scalars): string => (observable === 'phase-at-peak' ? 'Phase at the peak' : observable === 'amplitude-at-peak' ? 'Amplitude at the peak' : (scalars.get(observable)?.title ?? observable));
+
 export const isMeter = (found: Meter | readonly Finding[]): found is Meter => 'of' in found;
 
 /** Every run's number, or what stops one of them. */
