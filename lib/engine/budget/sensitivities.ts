@@ -6,8 +6,10 @@ import { waveformsOf } from './relatives';
 import type { Change, Rerun } from './rerun';
 import { stepsOf } from './setting-steps';
 
-/** Ten times what one number costs with its two routes, its error bar and its budget. */
+/** Ten times what one number costs with its two routes, its error bar and its budget, counted in single computations by route A. */
 const MOST_RERUNS = 120;
+/** A maximum over the phase of both polarisations at once is a search over azimuths: as dear as all of that. */
+const OF_A_SEARCH = 120;
 /** Samples of all modes that may be gone through altogether; counted, because a clock would not count the same twice. */
 const MOST_SAMPLES = 4e8;
 
@@ -21,6 +23,11 @@ interface Standing {
   readonly index: number;
   readonly here: number;
   readonly rerun: Rerun;
+}
+
+function costOf(setting: string, tried: unknown, { settings }: Measurement): number {
+  const maximised = settings.find(({ name }) => name === 'maximise')?.value;
+  return setting === 'response' && tried === 'complex' && Array.isArray(maximised) && maximised.includes('phase') ? OF_A_SEARCH : 1;
 }
 
 /** The value that a setting had at this point, of a sweep too. */
@@ -55,9 +62,11 @@ export function sensitivitiesOf(standing: Standing): Sensitivity[] {
     for (const tried of stepsOf(used.name, now)) {
       if (!canTry(used.name, tried, request)) continue;
       const head = { setting: used.name, standing: used.standing, ...(used.unit === undefined ? {} : { unit: used.unit }), used: now, tried };
-      const value = left > 0 ? rerun(changeTo(used.name, tried, request)) : null;
-      const because = left > 0 ? 'cannot be computed so' : 'not tried: it would cost more than ten times the claim itself';
-      left--;
+      const cost = costOf(used.name, tried, measurement);
+      const isTried = cost < left;
+      const value = isTried ? rerun(changeTo(used.name, tried, request)) : null;
+      const because = isTried ? 'cannot be computed so' : 'not tried: it would cost more than ten times the claim itself';
+      if (isTried) left -= cost;
       rows.push(value === null ? { ...head, value, change: null, because } : { ...head, value, change: value - here });
     }
   }

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { completeMeasurement } from '@/lib/engine/budget/complete-measurement';
 import { smoothedInspiral } from '@/lib/engine/budget/smooth-inspiral';
+import { sensitivitiesOf } from '@/lib/engine/budget/sensitivities';
 import { stepsOf } from '@/lib/engine/budget/setting-steps';
 import type { Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled, type MeasureRequest, type Quantity } from '@/lib/engine/contract/quantity';
@@ -126,6 +127,17 @@ describe('sensitivities', () => {
 
   it('say of what cannot be computed that it cannot', () => {
     expect(rows.find(({ setting, tried }) => setting === 'normaliseBy' && tried === 'adm')).toMatchObject({ value: null, change: null, because: 'cannot be computed so' });
+  });
+
+  it('are not tried beyond ten times the cost of the claim, which is counted and said', () => {
+    const setting = (name: string, value: unknown) => ({ name, value, standing: 'assumed' as const });
+    const measurement = { ...completed(a, []), settings: [setting('maximise', ['time', 'phase']), setting('response', 'plus'), setting('taper', 'auto')] };
+    const told = sensitivitiesOf({ request: { claimId: 'C', inputs: { of: { a }, noise: null }, settings: {}, over: null, claimed: [null], withFigures: true }, measurement, index: 0, here: 1, rerun: () => 2 });
+    expect(told.filter(({ because }) => because?.startsWith('not tried')).map(({ setting: name, tried }) => [name, tried])).toEqual([['response', 'complex']]);
+    expect(told.at(-1)).toMatchObject({ setting: 'taper', tried: 'none', value: 2, change: 1 });
+    const huge = { ...a, axis: { length: 5e8 } as Float64Array };
+    const none = sensitivitiesOf({ request: { claimId: 'C', inputs: { of: { a: huge }, noise: null }, settings: {}, over: null, claimed: [null], withFigures: true }, measurement, index: 0, here: 1, rerun: () => 2 });
+    expect(none.every(({ value }) => value === null)).toBe(true);
   });
 
   it('of a sweep stand at its own value of the worst point', () => {
