@@ -63,7 +63,7 @@ function ratioAtJoin({ route }: RouteKit, { point, amplitude }: Joined): number 
 /** The numerical part of a hybrid is face-on and plus; a claim that says otherwise means another number. */
 function faceOnStops(request: PointRequest): (Finding | null)[] {
   const { declared } = request;
-  const turned = (declared.inclinationRad ?? 0) !== 0;
+  const turned = declared.inclinationRad !== undefined && declared.inclinationRad !== houseValues.inclinationRad;
   const other = declared.response !== undefined && declared.response !== 'plus';
   const averaged = declared.average !== undefined && declared.average !== 'optimal';
   if (!turned && !other && !averaged) return [null];

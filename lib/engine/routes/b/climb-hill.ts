@@ -5,7 +5,14 @@ export interface Summit {
   readonly value: number;
 }
 
-/** Golden section for one variable between two bounds; the ends count too. */
+/**
+ * Golden section for one variable between two bounds; the ends count too.
+ * Shape:  one place and the value there.
+ * Units:  those of the variable; so is the tolerance.
+ * Error:  the place to the tolerance, on a hill without a second top.
+ * Fails:  never.
+ * Source: Kiefer 1953 (from memory).
+ */
 export function goldenMaximum(f: (x: number) => number, low: number, high: number, tolerance: number): Summit {
   let [a, b] = [low, high];
   let [c, d] = [b - GOLDEN * (b - a), a + GOLDEN * (b - a)];
