@@ -23,6 +23,8 @@ const LEAST_SAME = 2;
 const LEAST_APART = 0.25;
 /** A relation that holds everywhere must hold over this many octaves. */
 const LEAST_RELATED = 3;
+/** At this many points, however wide the octaves that they stand for: a few agree by chance. */
+const LEAST_POINTS = 12;
 
 interface Point {
   readonly fHz: number;
@@ -48,6 +50,8 @@ function pointsAgainst({ f, psd }: UploadedCurve, curve: BuiltInCurve, read: (fH
   return points;
 }
 
+const isEnough = (points: readonly Point[]): boolean => points.length >= LEAST_POINTS && octaves(points) >= LEAST_RELATED;
+
 const octaves = (points: readonly Point[]): number => points.reduce((sum, { width }) => sum + width, 0);
 
 /** Octaves of the longest piece in which every point is copied. */
@@ -64,7 +68,7 @@ const median = (values: readonly number[]): number => [...values].sort((a, b) =>
 
 /** Is the amplitude density that of the built-in curve times one number? */
 function constantRatio(points: readonly Point[]): number | null {
-  if (octaves(points) < LEAST_RELATED) return null;
+  if (!isEnough(points)) return null;
   const middle = median(points.map(({ apart }) => apart));
   return points.every(({ apart }) => Math.abs(apart - middle) < SAME) ? Math.exp(middle) : null;
 }
@@ -74,7 +78,7 @@ const spread = (values: readonly number[]): boolean => values.length > 0 && valu
 /** S taken for its root or the other way round: the column was read as another density. */
 function densityMistaken(curve: UploadedCurve, known: BuiltInCurve): string | null {
   const points = pointsAgainst(curve, known);
-  if (octaves(points) < LEAST_RELATED) return null;
+  if (!isEnough(points)) return null;
   const lnKnown = points.map(({ fHz }) => Math.log(known.psd(fHz)));
   const lnHere = points.map(({ apart }, i) => 2 * apart + lnKnown[i]!);
   if (spread(lnHere.map((x, i) => x - lnKnown[i]! / 2))) return 'is the square root of it: an amplitude density read as a power density?';
@@ -84,7 +88,7 @@ function densityMistaken(curve: UploadedCurve, known: BuiltInCurve): string | nu
 
 const angular = (curve: UploadedCurve, known: BuiltInCurve): boolean => {
   const points = pointsAgainst(curve, known, (x) => x / (2 * Math.PI));
-  return octaves(points) >= LEAST_RELATED && spread(points.map(({ apart }) => apart));
+  return isEnough(points) && spread(points.map(({ apart }) => apart));
 };
 
 interface Octave {
@@ -148,7 +152,7 @@ function relationTo(curve: UploadedCurve, known: BuiltInCurve, named: boolean): 
   if (angular(curve, known)) return { says: 'is that curve with its frequencies multiplied by 2π: an angular frequency in the first column?', fix: 'Give frequencies in Hz.' };
   const apart = octaves(points.filter((point) => Math.abs(point.apart) > APART));
   const same = longestSame(points);
-  const close = same >= LEAST_SAME && apart >= LEAST_APART;
+  const close = points.length >= LEAST_POINTS && same >= LEAST_SAME && apart >= LEAST_APART;
   const claimed = named && points.length > 1 && octaves(points) >= 1 && apart >= LEAST_APART;
   if (!close && !claimed) return null;
   const ends = same >= LEAST_APART ? 'One coefficient may be mistyped, or noise was added to it.' : 'It may be another version.';

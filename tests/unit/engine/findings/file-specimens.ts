@@ -72,7 +72,7 @@ export const fileSpecimens: readonly FindingSpecimen[] = [
   {
     number: 'V20', code: 'engine/curve-identity', level: 'needs-answer', when: 'one coefficient of a published curve is mistyped',
     raises: () => snr(['# second-generation design (G2)', ...curveRows(0.0512 / 0.0152)]), says: ['called G2', '×1.83 above it', '10–20 Hz ×1.83', /160–8192 Hz equal/],
-    silent: () => snr(['# second-generation design (G2)', ...curveRows()]),
+    silent: async () => [...(await snr(['# second-generation design (G2)', ...curveRows()])), ...(await snr(['10 3e-23', '100 3e-23', '8192 3e-23']))],
   },
   {
     number: 'V20', code: 'engine/curve-identity', level: 'needs-answer', when: 'amplitudes are read as powers, and nothing names the curve',
