@@ -104,14 +104,14 @@ const fromName = (name: string): string => name.replace(/([A-Z])/g, ' $1').toLow
 
 /** Label and unit of a component of a claim whose number is in `unit`. */
 export function componentWords(name: string, quantity: string, unit: string): ComponentWords {
-  const modal = /^(E|rho2):(\d+),(-?\d+)$/.exec(name);
-  if (modal) return { label: `${ofMode[modal[1]!]} (${modal[2]},${modal[3]!.replace('-', '−')})`, unit: modal[1] === 'E' ? unit : '' };
+  const [, of = '', l, m = ''] = /^(E|rho2):(\d+),(-?\d+)$/.exec(name) ?? [];
+  if (of !== '') return { label: `${ofMode[of]} (${l},${m.replace('-', '−')})`, unit: of === 'E' ? unit : '' };
   const fit = fits[name];
   if (fit) return { label: fit, unit };
   if (name === 'start' || name === 'radiated') return balanceWords(name, quantity);
   if (name === 'ratio' && quantity === 'em-frequency') return { label: 'Over the cut-off of the plasma', unit: '' };
-  const [label, of] = words[name] ?? [fromName(name), ''];
-  return { label, unit: of === VALUE ? unit : of };
+  const [label, inUnit] = words[name] ?? [fromName(name), ''];
+  return { label, unit: inUnit === VALUE ? unit : inUnit };
 }
 
 function balanceWords(name: 'start' | 'radiated', quantity: string): ComponentWords {

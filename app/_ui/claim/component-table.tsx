@@ -21,7 +21,7 @@ export const hasComponents = (claim: ResultClaim): boolean => claim.points.some(
 export function ComponentTable({ claim }: { readonly claim: ResultClaim }) {
   const points = pointsToShow(claim.points);
   const names = [...new Set(points.flatMap(({ components }) => Object.keys(components ?? {})))];
-  const single = points.length === 1 && Object.keys(points[0]!.at).length === 0;
+  const single = points.length === 1 && points.every(({ at }) => Object.keys(at).length === 0);
   return (
     <>
       <Table caption={`What comes with the number of ${claim.id}, by route A`}>
