@@ -56,7 +56,7 @@ function DataSum({ claim, group }: { readonly claim: ResultClaim; readonly group
   if (!total) return <Sum group={group} unit={claim.unit} label={<>Known part, <i>k</i> = 2</>}>{coverage}</Sum>;
   const { interval, degreesOfFreedom } = total;
   return (
-    <Sum group={{ ...group, expanded: total.expanded }} unit={claim.unit} label={<>{total.missing.length > 0 ? 'All known lines' : 'All lines'}, <i>k</i> = {formatNumber(total.coverageFactor, { significant: 3 })}</>}>
+    <Sum group={{ ...group, expanded: total.expanded }} unit={claim.unit} label={<>{total.missing.length > 0 ? 'All known lines' : 'All lines'}, <i>k</i> = {(total.coverageFactor === 2 ? '2' : formatNumber(total.coverageFactor, { significant: 3 }))}</>}>
       {coverage}
       {degreesOfFreedom !== null && <> {formatNumber(degreesOfFreedom, { significant: 2 })} effective degrees of freedom.</>}
       {interval && <> By draws, 95 %: <NumberCell value={interval.low} significant={4} unit={claim.unit} /> to <NumberCell value={interval.high} significant={4} unit={claim.unit} />.</>}

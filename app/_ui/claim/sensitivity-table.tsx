@@ -8,8 +8,13 @@ import { formatSetting, settingLabel } from './setting-names';
 /** From here on a setting decides the claim by itself. */
 const AS_MUCH = 1;
 
-function Moved({ row, unit }: { readonly row: ResultSensitivity; readonly unit: string }) {
+/** What the computation itself leaves open: a smaller change is none that it could tell. */
+const resolvedBy = ({ uncertainty }: ResultClaim): number => uncertainty?.computation.expanded ?? 0;
+
+function Moved({ row, claim }: { readonly row: ResultSensitivity; readonly claim: ResultClaim }) {
+  const { unit } = claim;
   if (row.change === null) return <td colSpan={2}><Unknown>no number</Unknown> {row.because}</td>;
+  if (Math.abs(row.change) <= resolvedBy(claim)) return <td colSpan={2} className="text-right! text-ink-2">by less than <i>U</i></td>;
   const size = row.inTolerances;
   return (
     <>
@@ -42,7 +47,7 @@ export function SensitivityTable({ claim }: { readonly claim: ResultClaim }) {
               <th scope="row" className="font-normal!">{settingLabel(row.setting)} <SettingStanding standing={row.standing} /></th>
               <td>{formatSetting(row.setting, row.used, row.unit)}</td>
               <td>{formatSetting(row.setting, row.tried, row.unit)}</td>
-              <Moved row={row} unit={claim.unit} />
+              <Moved row={row} claim={claim} />
             </tr>
           ))}
         </tbody>

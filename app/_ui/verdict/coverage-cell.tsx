@@ -20,7 +20,7 @@ export function CoverageStatement({ coverage, full }: { readonly coverage: Cover
   return (
     <>
       <b>{word}</b>
-      {because && <span className="remark">{because}</span>}
+      {because && <>{' '}<span className="remark">{because}</span></>}
     </>
   );
 }

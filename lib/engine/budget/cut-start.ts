@@ -7,7 +7,14 @@ export function unitsPerM({ domain, unit, ownTotalMassMsun }: Waveform): number 
   return unit === 'M' ? 1 : ownTotalMassMsun === null ? null : ownTotalMassMsun * MSUN_S;
 }
 
-/** The record without what lies before a time on its own axis; null where fewer than half of its samples would be left. */
+/**
+ * The record without what lies before a time on its own axis.
+ * Shape:  the rest of every series.
+ * Units:  those of the axis.
+ * Error:  none.
+ * Fails:  null where fewer than half of its samples would be left.
+ * Source: domain reference 5.1 (E07).
+ */
 export function cutBefore(waveform: Waveform, time: number): Waveform | null {
   const { axis, content } = waveform;
   const from = axis.findIndex((t) => t >= time);

@@ -44,6 +44,12 @@ describe('sensitivities', () => {
     expect(words).toContain('no number cannot be computed so');
     expect(words).toContain('None of these steps');
   });
+
+  it('below what the computation can tell are said to be so, without digits', () => {
+    const words = text(createElement(SensitivityTable, { claim: claim({ sensitivities: [row({ change: 1e-12, inTolerances: 1e-9 })], uncertainty: { computation: total, data: total } }) }));
+    expect(words).toContain('by less than U');
+    expect(words).not.toContain('10 −12');
+  });
 });
 
 describe('the metric bound', () => {
