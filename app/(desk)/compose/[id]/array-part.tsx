@@ -65,7 +65,8 @@ function Holdings({ submissionId, fileId, file, mapping, change }: HoldingsProps
   return <Assign structure={structure} file={file} mapping={mapping} change={change} />;
 }
 
-function Assign({ structure, file, mapping, change }: Pick<HoldingsProps, 'file' | 'mapping' | 'change'> & { readonly structure: StructureView }) {
+/** Once the file is read: rows of what stands for what, times, and all that the file holds. */
+export function Assign({ structure, file, mapping, change }: Pick<HoldingsProps, 'file' | 'mapping' | 'change'> & { readonly structure: StructureView }) {
   const proposed = proposals(structure.entries);
   const paths = structure.entries.filter(({ kind, refusal }) => kind === 'dataset' && refusal === null).map(({ path }) => path);
   const list = useId();
