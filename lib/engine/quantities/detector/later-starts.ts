@@ -2,6 +2,7 @@ import { cutBefore, unitsPerM } from '@/lib/engine/budget/cut-start';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import type { PointRequest } from '@/lib/engine/conditioning/detector-settings';
+import { houseValues } from '@/lib/engine/contract/house-values';
 import type { BudgetLine } from '@/lib/engine/contract/measurement';
 import { short } from '@/lib/engine/findings/detector-findings';
 import type { OwnBudget } from './recipe';
@@ -19,7 +20,7 @@ function begunLater(c: ConditionedWaveform, modes: Parameters<typeof conditionWa
 
 /** All of one part begun later at once; null where one of them cannot be. */
 function partBegunLater(request: PointRequest, part: 'signals' | 'templates', by: number): Partial<PointRequest> | null {
-  const modes = request.declared.modes ?? 'all';
+  const modes = request.declared.modes ?? houseValues.modes;
   const signals = request.signals ?? [request.a];
   const cut = (part === 'signals' ? signals : (request.templates ?? [])).map((c) => begunLater(c, modes, by));
   if (cut.some((c) => c === null)) return null;

@@ -28,8 +28,8 @@ export function isScannable(signals: readonly Side[], request: TemplateRequest):
 
 export const pairRequest = ({ templates, onStep: _, ...shared }: TemplateRequest, a: Side, index: number): MatchRequest => ({ ...shared, a, b: templates[index]! });
 
-/** What the rough values of a scan can be low by. */
-const ROUGH = 0.01;
+/** What the rough values of a scan can be low by: more where signals match so little that several lags are nearly as good. */
+const roughBelow = (best: number): number => (best > 0.8 ? 0.003 : 0.02);
 /** What the sharp ones can be off by. */
 const SHARP = 5e-5;
 /** Of ln of the factor (rule 2.7). */
@@ -70,13 +70,14 @@ function likely(scan: TemplateScan, s: number, templates: number, factors: numbe
   const rough = (t: number, g: number): number => scan.rough[(s * templates + t) * factors + g]!;
   let best = 0;
   for (let t = 0; t < templates; t++) for (let g = 0; g < factors; g++) best = Math.max(best, rough(t, g));
+  const least = 1 - roughBelow(best);
   const found: { t: number; g: number }[] = [];
   for (let g = 0; g < factors; g++) {
     for (let t = 0; t < templates; t++) {
       const around = Math.max(rough(t, Math.max(0, g - 1)), rough(t, g), rough(t, Math.min(factors - 1, g + 1)));
       const drop = around - Math.min(rough(t, Math.max(0, g - 1)), rough(t, Math.min(factors - 1, g + 1)));
       // What the hill may rise between grid points counts as well.
-      if (rough(t, g) + drop > best * (1 - ROUGH) && rough(t, g) > around * (1 - ROUGH)) found.push({ t, g });
+      if (rough(t, g) + drop > best * least && rough(t, g) > around * least) found.push({ t, g });
     }
   }
   return found;
@@ -171,7 +172,14 @@ export function bestPlaces(signals: readonly Side[], request: RealRequest, conte
   return places;
 }
 
-/** Pair by pair, as `match` does it. */
+/**
+ * Pair by pair, as `match` does it.
+ * Shape:  one answer a signal; the first of equal templates.
+ * Units:  as `match`.
+ * Error:  as `match`.
+ * Fails:  never; a match of NaN loses to every number.
+ * Source: settings.md section 3.
+ */
 export function bestByPairs(signals: readonly Side[], request: TemplateRequest, matchOf: (pair: MatchRequest) => BestTemplate['outcome']): BestTemplate[] {
   const pairs = signals.length * request.templates.length;
   return signals.map((a, s) => {

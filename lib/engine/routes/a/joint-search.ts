@@ -27,7 +27,14 @@ export interface Searched {
   readonly azimuth: boolean;
 }
 
-/** Which of the template's own parameters a request leaves free; a phase is an azimuth where the response is complex and there are modes to turn. */
+/**
+ * Which of the template's own parameters a request leaves free; a phase is an azimuth where the response is complex and there are modes to turn.
+ * Shape:  one flag a parameter.
+ * Units:  none.
+ * Error:  none.
+ * Fails:  never.
+ * Source: settings.md rule 2.7.
+ */
 export function searchedIn(request: MatchRequest): Searched {
   const has = (what: 'inclination' | 'templateMass' | 'phase'): boolean => request.maximise.includes(what);
   const modes = request.b.waveform.content.kind === 'modes';

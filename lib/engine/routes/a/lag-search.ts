@@ -221,43 +221,6 @@ function candidatesOf(values: Float64Array, share: number): number[] {
   return found.sort((p, q) => values[q]! - values[p]! || p - q);
 }
 
-/** |Σ c_j e^{2πijx}| over all bins of the one-sided product. */
-function modulusAt({ plusRe, plusIm, n }: CrossSpectrum, x: number): number {
-  const stepRe = Math.cos(TURN * x);
-  const stepIm = Math.sin(TURN * x);
-  let er = 1;
-  let ei = 0;
-  let sumRe = 0;
-  let sumIm = 0;
-  for (let j = 0; j < n; j++) {
-    const a = plusRe[j]!;
-    const b = plusIm[j]!;
-    sumRe += a * er - b * ei;
-    sumIm += a * ei + b * er;
-    const next = er * stepRe - ei * stepIm;
-    ei = er * stepIm + ei * stepRe;
-    er = next;
-  }
-  return Math.hypot(sumRe, sumIm);
-}
-
-/**
- * About how large the modulus gets over all shifts: the whole sum where the core's grid, read off a parabola, is highest.
- * Shape:  a product without a second side.
- * Units:  those of the cross spectrum.
- * Error:  low by a few parts in a thousand, or by what a hill of nearly the same height elsewhere is higher; for ranking only.
- * Fails:  never; an empty spectrum gives 0.
- * Source: as `findLag`, without its refinement.
- */
-export function glanceAtLag(c: CrossSpectrum): number {
-  if (c.n === 0) return 0;
-  const grid = coarseGrid(c, coreOf(c), 'modulus', 1);
-  const n = grid.length;
-  let top = 0;
-  for (let i = 1; i < n; i++) if (grid[i]! > grid[top]!) top = i;
-  return modulusAt(c, (top + vertexBeside(grid[top > 0 ? top - 1 : n - 1]!, grid[top]!, grid[top + 1 < n ? top + 1 : 0]!)) / n);
-}
-
 /**
  * The shift at which a cross spectrum is largest, over all shifts that its bins resolve.
  * Shape:  one peak; x in (−½, ½] cycles per bin, later > 0 for b.

@@ -39,10 +39,14 @@ function responseOf(re: Float64Array, im: Float64Array | null, response: Packing
   return re.map((x, k) => plus * x - (im === null ? 0 : cross * im[k]!));
 }
 
+/** Buffers of the last size: the records of a bank mostly ask for the same; imaginary parts stay zero. */
+let scratch: { readonly data: Float64Array; readonly out: Float64Array } | null = null;
+
 function transformed(series: Float64Array, size: number, first: number, bins: number): Float64Array {
-  const data = new Float64Array(2 * size);
+  if (scratch?.data.length !== 2 * size) scratch = { data: new Float64Array(2 * size), out: new Float64Array(2 * size) };
+  const { data, out } = scratch;
   for (let k = 0; k < series.length; k++) data[2 * k] = series[k]!;
-  const out = new Float64Array(2 * size);
+  data.fill(0, 2 * series.length);
   transformOfSize(size).forward(out, data);
   return out.subarray(2 * first, 2 * (first + bins));
 }

@@ -2,8 +2,10 @@ import type { Side, TemplateRequest } from '@/lib/engine/contract/route';
 import type { Response } from '@/lib/engine/contract/settings';
 import { binWeights } from './bin-weights';
 import type { CrossSpectrum } from './cross-spectrum';
-import { findLag, glanceAtLag } from './lag-search';
+import { glanceAtLag } from './lag-glance';
+import { findLag } from './lag-search';
 import type { Numerics } from './numerics';
+import { RoughValues } from './rough-values';
 import { responseSource, type PackedSide, type ResponseSource } from './packed-side';
 import type { SpectrumStore } from './spectrum-store';
 import { templateFrame } from './template-frame';
@@ -26,6 +28,9 @@ export interface ScanRequest {
 
 /** Of a signal's weighted power, what may be left out at each end of its bins: it changes no match by more than the root. */
 const LEFT_OUT = 1e-9;
+
+/** Numbers of the stretched sides that are kept at once, at several factors: 32 MB. */
+const MOST_KEPT = 1 << 22;
 
 interface Bench {
   readonly signals: readonly PackedSide[];
@@ -97,16 +102,9 @@ function productOf(a: Weighed, b: PackedSide, normB: number, buffers: Buffers): 
 
 const normalised = (value: number, { normA, normB }: CrossSpectrum): number => (normA > 0 && normB > 0 ? value / Math.sqrt(normA * normB) : 0);
 
-/**
- * Looks at every signal with every template at every factor on the template's mass.
- * Shape:  time-domain sides in one real response, time and phase free.
- * Units:  dimensionless.
- * Error:  rough: low by some 0.5 % of the match; sharp: 2e-5, the bins' own.
- * Fails:  never; sides without power in the band give 0.
- * Source: engine design: spectra of all templates once; a mass only stretches the frequencies.
- */
-export function scanTemplates({ signals, factors, request, store, numerics }: ScanRequest): TemplateScan {
-  const { templates, band, response, rescale, onStep } = request;
+/** Spectra and weights of one factor; those of the held sides are made once, the others kept while there is room. */
+function benchMaker({ signals, factors, request, store, numerics }: ScanRequest): (factor: number) => Bench {
+  const { templates, band, response, rescale } = request;
   const frame = templateFrame(signals, templates, factors, store, numerics);
   const weigher = store.weigher(band.noise, numerics.noiseTableHalvings);
   const packing = { band, response, store, numerics };
@@ -123,7 +121,7 @@ export function scanTemplates({ signals, factors, request, store, numerics }: Sc
   const range = [factors[0]!, factors[factors.length - 1]!] as const;
   const heldSignals = frame.held === 'signals' ? signals.map((side, i) => read(side, signalSources[i]!, 1, still)) : null;
   const heldTemplates = frame.held === 'templates' ? templates.map((side, i) => read(side, templateSources[i]!, 1, range)) : null;
-  const benchAt = (factor: number): Bench => {
+  const made = (factor: number): Bench => {
     const dfHz = frame.dfHz(factor);
     const readSignals = heldSignals ?? signals.map((side, i) => read(side, signalSources[i]!, factor, still));
     const readTemplates = heldTemplates ?? templates.map((given, i) => read(factor === 1 ? given : rescale(given, factor), templateSources[i]!, factor, still));
@@ -131,26 +129,59 @@ export function scanTemplates({ signals, factors, request, store, numerics }: Sc
     const bins = { dfHz, fLowHz: band.fLowHz, fHighHz: Math.min(band.fHighHz, last * dfHz), firstBin: 1, lastBin: last, curveLowHz: band.noise.fLowHz, curveHighHz: band.noise.fHighHz, order: numerics.edgeOrder };
     return { signals: readSignals, templates: readTemplates, weights: binWeights(weigher, bins) };
   };
+  const benches = new Map<number, Bench>();
+  return (factor) => {
+    const known = benches.get(factor);
+    if (known) return known;
+    const bench = made(factor);
+    const stretched = frame.held === 'templates' ? bench.signals : bench.templates;
+    const numbers = stretched.reduce((sum, { re }) => sum + 3 * re.length, bench.weights.values.length);
+    if ((benches.size + 1) * numbers > MOST_KEPT) benches.clear();
+    benches.set(factor, bench);
+    return bench;
+  };
+}
+
+/**
+ * Looks at every signal with every template at every factor on the template's mass.
+ * Shape:  time-domain sides in one real response, time and phase free.
+ * Units:  dimensionless.
+ * Error:  rough: low by some 0.5 % of the match; sharp: 2e-5, the bins' own.
+ * Fails:  never; sides without power in the band give 0.
+ * Source: engine design: spectra of all templates once; a mass only stretches the frequencies.
+ */
+export function scanTemplates({ signals, factors, request, store, numerics }: ScanRequest): TemplateScan {
+  const { templates, onStep } = request;
+  const benchAt = benchMaker({ signals, factors, request, store, numerics });
   const buffers: Buffers = { re: new Float64Array(0), im: new Float64Array(0) };
-  const rough = new Float32Array(signals.length * templates.length * factors.length);
-  factors.forEach((factor, g) => {
-    onStep?.(g / factors.length);
-    const bench = benchAt(factor);
+  const rough = new RoughValues(signals.length, templates.length, factors.length);
+  const lookAt = (g: number, wanted: (s: number, t: number) => boolean): void => {
+    const bench = benchAt(factors[g]!);
     const norms = bench.templates.map((template) => normOf(template, bench.weights));
     bench.signals.forEach((signal, s) => {
       const a = weighed(signal, bench.weights);
       bench.templates.forEach((template, t) => {
+        if (!wanted(s, t)) return;
         const product = productOf(a, template, norms[t]!, buffers);
-        rough[(s * templates.length + t) * factors.length + g] = normalised(glanceAtLag(product), product);
+        rough.set(s, t, g, normalised(glanceAtLag(product), product));
       });
     });
+  };
+  const first = factors.map((_, g) => g).filter((g) => rough.isFirst(g));
+  const then = factors.map((_, g) => g).filter((g) => !rough.isFirst(g));
+  first.forEach((g, i) => {
+    onStep?.(i / factors.length);
+    lookAt(g, () => true);
   });
-  let last: { factor: number; bench: Bench } | null = null;
+  const between = rough.intervals();
+  then.forEach((g, i) => {
+    onStep?.((first.length + i) / factors.length);
+    lookAt(g, (s, t) => between.matters(s, t, g));
+  });
   const sharp = (s: number, t: number, factor: number): number => {
-    if (last?.factor !== factor) last = { factor, bench: benchAt(factor) };
-    const { bench } = last;
+    const bench = benchAt(factor);
     const product = productOf(weighed(bench.signals[s]!, bench.weights), bench.templates[t]!, normOf(bench.templates[t]!, bench.weights), buffers);
     return normalised(findLag(product, 'modulus', 1).value, product);
   };
-  return { rough, sharp };
+  return { rough: rough.values, sharp };
 }

@@ -1,0 +1,77 @@
+import { describe, expect, it } from 'vitest';
+import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
+import type { MaximiseOver } from '@/lib/engine/contract/settings';
+import type { Side, TemplateRequest } from '@/lib/engine/contract/route';
+import { pairRequest } from '@/lib/engine/routes/a/best-templates';
+import { JointSearch } from '@/lib/engine/routes/a/joint-search';
+import { houseNumerics } from '@/lib/engine/routes/a/numerics';
+import { createRouteA } from '@/lib/engine/routes/a/route-a';
+import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+import { routeB } from '@/lib/engine/routes/b/route-b';
+import { MSUN_S } from '@/lib/engine/units/constants';
+import { binary, curve } from '../support/detector-claims';
+import { seededRandom } from '../support/seeded-random';
+
+const random = seededRandom(11);
+const drawn = (massMsun: number): Side => {
+  const spin = 1.6 * random() - 0.8;
+  const c = conditionWaveform(binary('drawn', { massRatio: 1 + 2 * random(), chi1z: spin, chi2z: spin, mOmega0: 0.03, stepM: 1, modes: ['22'] }), 'all');
+  return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: massMsun * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
+};
+const rescale = (side: Side, factor: number): Side => ({ ...side, secondsPerUnit: side.secondsPerUnit * factor });
+const requestOf = (templates: readonly Side[], fLowHz: number, range: readonly [number, number]): TemplateRequest => ({
+  templates,
+  band: { noise: curve('G2'), fLowHz, fHighHz: 700 },
+  response: 'plus',
+  maximise: ['time', 'phase', 'templateMass'] satisfies MaximiseOver[],
+  templateMassRange: range,
+  rescale,
+});
+
+/** Every template at every factor, the best three of each refined: no glance, no hill left out. */
+function byFullSearch(a: Side, request: TemplateRequest): { index: number; match: number; massFactor: number } {
+  const store = new SpectrumStore();
+  const all = request.templates.map((_, index) => {
+    const { alignment, placement } = new JointSearch(pairRequest(request, a, index), { mass: true, inclination: false, azimuth: false }, store, houseNumerics).run();
+    return { index, match: alignment.value, massFactor: placement.massFactor };
+  });
+  return all.reduce((best, next) => (next.match > best.match ? next : best));
+}
+
+describe('the search over many templates', () => {
+  it.each([
+    [60, 25, [0.92, 1.1]],
+    [150, 15, [0.9, 1.12]],
+  ] as const)('finds at %d M☉ what the search without shortcuts finds', (massMsun, fLowHz, range) => {
+    const templates = Array.from({ length: 3 }, () => drawn(massMsun));
+    const a = drawn(massMsun);
+    const request = requestOf(templates, fLowHz, range);
+    const [found] = createRouteA().bestTemplates([a], request);
+    const full = byFullSearch(a, request);
+    expect(found!.index).toBe(full.index);
+    expect(found!.outcome.match).toAgreeWith(full.match, 1e-9);
+    expect(found!.outcome.massFactor).toAgreeWith(full.massFactor, 2e-5);
+  }, 120_000);
+
+  it('is the same whichever side is held, and by the other route', () => {
+    const [a, other] = [drawn(100), drawn(100)];
+    const request = requestOf([drawn(100)], 20, [0.9, 1.1]);
+    const [alone] = createRouteA().bestTemplates([a], request);
+    const [among] = createRouteA().bestTemplates([a, other], request);
+    expect(among!.outcome.match).toAgreeWith(alone!.outcome.match, 1e-10);
+    const [byB] = routeB.bestTemplates([a], request);
+    expect(byB!.outcome.match).toAgreeWith(alone!.outcome.match, 2.5e-8);
+  });
+
+  it('finds a stretched copy of the signal, and says when it lies on a bound', () => {
+    const a = drawn(100);
+    const copy = rescale(a, 1 / 1.137);
+    const request = requestOf([drawn(100), copy], 20, [0.9, 1.2]);
+    const [inside] = createRouteA().bestTemplates([a], request);
+    expect(inside).toMatchObject({ index: 1, outcome: { onBound: false } });
+    expect(inside!.outcome.match).toAgreeWith(1, 1e-9);
+    expect(inside!.outcome.massFactor).toAgreeWith(1.137, 1e-5);
+    const [outside] = createRouteA().bestTemplates([a], { ...request, templates: [copy], templateMassRange: [0.9, 1.12] });
+    expect(outside!.outcome).toMatchObject({ onBound: true, massFactor: 1.12 });
+  });
+});
