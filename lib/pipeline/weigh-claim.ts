@@ -36,7 +36,7 @@ export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim 
     quantity: claim.quantity.id,
     unit: unitOf(claim.quantity, claim.settings),
     verdict: claimVerdict(points.map((point) => point.verdict.word)),
-    remarks: remarksOf(points.map(({ claimed, measured, verdict }) => ({ claimed, measured, word: verdict.word })), measurement.budget, uncertainty.data),
+    remarks: [...ofFindings(measurement.findings), ...remarksOf(points.map(({ claimed, measured, verdict }) => ({ claimed, measured, word: verdict.word })), measurement.budget, uncertainty.data)],
     coverage: coverageOf(worst.claimed, worst.measured.value, measurement.budget, uncertainty.data),
     points: points.map(resultPoint),
     budget: measurement.budget.map(budgetLine),
@@ -50,6 +50,9 @@ export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim 
     candidates: [],
   };
 }
+
+/** An order whose quartiles lie further apart than one is none (domain reference 5.4); the number stands, and the remark beside it. */
+const ofFindings = (findings: readonly Finding[]): string[] => (findings.some(({ code }) => code === 'engine/no-single-order') ? ['no single order'] : []);
 
 const farness = ({ verdict }: Weighed): number => (verdict.apart === null ? -1 : Math.abs(verdict.apart));
 

@@ -79,6 +79,12 @@ describe('a sheet walks from the hall to the weighing room', () => {
     expect(only.points[0]).toMatchObject({ claimed: 0.9, printed: '0.90', tolerance: 0.1 + 0.005, value: 0.95 });
   });
 
+  it('with the remark that there is no single order, where the measurement found none', async () => {
+    const finding = { code: 'engine/no-single-order', level: 'worth-a-look', where: 'A', text: 'no single order describes the record' } as const;
+    expect((await onlyClaim(sheet(), (request) => measured(request, { findings: [finding] }))).remarks).toEqual(['no single order']);
+    expect((await onlyClaim(sheet())).remarks).toEqual([]);
+  });
+
   it('with name, size and digest of each file it read, in the order in which they were needed', async () => {
     const { result } = await reproduced(sheet());
     expect(result.files.map(({ name, bytes }) => [name, bytes])).toEqual([['a.txt', 12], ['b.txt', 12], ['noise.txt', 20]]);
