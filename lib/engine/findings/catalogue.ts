@@ -5,13 +5,18 @@
 import type { FindingLevel } from '../contract/finding';
 import { furtherRows } from './catalogue-further';
 
+export interface CatalogueLevel {
+  readonly level: FindingLevel;
+  readonly when?: string;
+}
+
 export interface CatalogueRow {
   readonly code: string;
   /** Of the house's list of validations; empty for what a quantity adds. */
   readonly numbers: readonly string[];
   readonly part: Part;
   /** Mildest last where a code has several. */
-  readonly levels: readonly { readonly level: FindingLevel; readonly when?: string }[];
+  readonly levels: readonly [CatalogueLevel, ...CatalogueLevel[]];
   /** Which claims it concerns. */
   readonly concerns: string;
   readonly rule: string;

@@ -1,6 +1,6 @@
 import type { Finding } from '../contract/finding';
 import type { Waveform } from '../contract/waveform';
-import { radiationRecord, type RadiationRecord, type RadiationVariable } from '../radiation/radiation-record';
+import { radiationRecord, type RadiationVariable } from '../radiation/radiation-record';
 import { readInspiral, type InspiralReading } from './inspiral-reading';
 import { lateDecay, type LateDecay } from './late-decay';
 import { peakOf } from './loud-modes';

@@ -40,7 +40,7 @@ const FindingsOf = ({ part }: { readonly part: Part }) => (
 /** The row of the address stands out, so that the eye finds what it came for. */
 function Row({ row }: { readonly row: CatalogueRow }) {
   const { code, numbers, levels, concerns, rule, advice } = row;
-  const strictest = findingLevels[levels[0]!.level];
+  const strictest = findingLevels[levels[0].level];
   return (
     <section id={findingAnchor(code)} aria-label={code} className={classes('edge grid scroll-mt-6 gap-x-6 gap-y-1 border-t border-hair py-3 pl-3 text-ui first:border-t-0 target:bg-hover sm:grid-cols-[15rem_minmax(0,1fr)]', strictest.edge)}>
       <div>
