@@ -31,7 +31,7 @@ export default function NoiseCurves() {
   );
 }
 
-const digitsOf = (hz: number): number => hz.toExponential().split('e')[0]!.replace('.', '').length;
+const digitsOf = (hz: number): number => hz.toExponential().replace(/e.*/, '').replace('.', '').length;
 const Hz = ({ value }: { readonly value: number }) => <NumberCell value={value} significant={digitsOf(value)} unit="Hz" />;
 
 function Curve({ curve }: { readonly curve: BuiltInCurve }) {

@@ -19,8 +19,8 @@ describe('what a file says about itself is kept', () => {
   });
 
   it('up to two hundred lines of five hundred bytes', () => {
-    const comments = commentsOf(`${`# ${'x'.repeat(2000)}\n`.repeat(300)}0 1\n1 2\n`)!;
+    const comments = commentsOf(`${`# ${'x'.repeat(2000)}\n`.repeat(300)}0 1\n1 2\n`) ?? [];
     expect(comments).toHaveLength(200);
-    expect(comments[0]!.text.length).toBeLessThan(501);
+    expect(comments[0]?.text.length).toBeLessThan(501);
   });
 });
