@@ -8,18 +8,23 @@ import { relativesOf, waveformsOf, type Kind } from './relatives';
 import type { Measured, Rerun } from './rerun';
 import { areal } from './areal-radius';
 
+/** Of a waveform and its reverse. */
+const MOST = 2;
+/** Of waveforms that are turned against each other: whatever is left, half a turn more would not make it negative. */
+const MOST_TURNED = 1;
+
 /**
- * The mismatches between the true waveforms that the one seen allows for.
- * Shape:  an interval of mismatches.
+ * The mismatches between the true waveforms that the one seen allows for, and that a mismatch can be at all.
+ * Shape:  an interval of mismatches in [0, most].
  * Units:  none.
  * Error:  none; a triangle inequality twice.
  * Fails:  never; not finite for what is not.
  * Source: domain reference 5.1: max(0, √m − Σ√ε) ≤ √m_true ≤ √m + Σ√ε.
  */
-export function mismatchBound(seen: number, known: readonly number[]): Interval {
+export function mismatchBound(seen: number, known: readonly number[], most: number = MOST): Interval {
   const slack = known.reduce((sum, epsilon) => sum + Math.sqrt(Math.max(0, epsilon)), 0);
   const root = Math.sqrt(Math.max(0, seen));
-  return { low: Math.max(0, root - slack) ** 2, high: (root + slack) ** 2 };
+  return { low: Math.min(most, Math.max(0, root - slack) ** 2), high: Math.min(most, (root + slack) ** 2) };
 }
 
 /** How a match-like number follows from a mismatch, and how alike its waveforms are compared. */
@@ -45,6 +50,13 @@ const likenesses: ReadonlyMap<string, Likeness> = new Map<string, Likeness>([
   ['mode-content', { ...ofMatch, maximise: rotations, complex: true }],
   ['degeneracy', { ...ofMatch, maximise: rotations, complex: true }],
 ]);
+
+/** Any of these, searched, can reverse a signal or bring it to where its product with the other vanishes. */
+const TURNING = new Set<MaximiseOver>([...shifts, ...rotations]);
+
+const searchedBy = (likeness: Likeness, { maximise }: DeclaredSettings): readonly MaximiseOver[] => (likeness.maximise === null ? [] : (maximise ?? likeness.maximise));
+
+const mostOf = (likeness: Likeness, settings: DeclaredSettings): number => (searchedBy(likeness, settings).some((what) => TURNING.has(what)) ? MOST_TURNED : MOST);
 
 export const isMatchLike = (quantityId: string): boolean => likenesses.has(quantityId);
 
@@ -78,7 +90,7 @@ function between(context: BoundContext, likeness: Likeness, a: Waveform, b: Wave
   const inclination = likeness.complex && typeof components.inclinationRad === 'number' ? { inclinationRad: components.inclinationRad } : {};
   const { maximise: _, ...declared } = { ...request.settings, ...inclination };
   const kept = Object.fromEntries(Object.entries(declared).filter(([name]) => (by.settings as readonly string[]).includes(name))) as DeclaredSettings;
-  const searched = (request.settings.maximise ?? likeness.maximise ?? []).filter((what) => what !== 'inclination' && what !== 'templateMass');
+  const searched = searchedBy(likeness, request.settings).filter((what) => what !== 'inclination' && what !== 'templateMass');
   const settings = { ...kept, ...(likeness.complex ? { response: 'complex' as const } : {}), ...(likeness.maximise === null ? {} : { maximise: searched }), ...more };
   const { over } = request;
   const swept = over !== null && by.settings.includes(over.setting) ? { setting: over.setting, values: [over.values[index]!] } : null;
@@ -109,7 +121,7 @@ function compareRuns(context: BoundContext, likeness: Likeness, kind: Kind): Com
 }
 
 /** The least match that still counts moves by the slack; of many signals the least known one speaks. */
-function fractionBound({ rerun, request, index }: BoundContext, known: readonly KnownTo[]): Interval | null {
+function fractionBound({ rerun, request, index }: BoundContext, known: readonly KnownTo[], most: number): Interval | null {
   const signals = new Set((request.inputs.of.signals ?? []).map(({ name }) => name));
   const worst = (list: readonly KnownTo[]): number => {
     const sums = new Map<string, number>();
@@ -119,7 +131,7 @@ function fractionBound({ rerun, request, index }: BoundContext, known: readonly 
   const slack = worst(known.filter(({ waveform }) => signals.has(waveform))) + worst(known.filter(({ waveform }) => !signals.has(waveform)));
   const { over, settings } = request;
   const threshold = over?.setting === 'threshold' ? over.values[index]! : (settings.threshold ?? houseMatchThreshold);
-  const at = mismatchBound(1 - threshold, [slack * slack]);
+  const at = mismatchBound(1 - threshold, [slack * slack], most);
   const asked = (match: number): number | null => (over?.setting === 'threshold' ? rerun({ swept: match }) : rerun({ settings: { threshold: match } }));
   const [low, high] = [asked(1 - at.low), asked(1 - at.high)];
   return low === null || high === null ? null : { low: Math.min(low, high), high: Math.max(low, high) };
@@ -127,10 +139,11 @@ function fractionBound({ rerun, request, index }: BoundContext, known: readonly 
 
 function inUnit(context: BoundContext, likeness: Likeness, known: readonly KnownTo[]): Interval | null {
   if (known.length === 0) return null;
-  if (context.quantityId === 'detectable-fraction') return fractionBound(context, known);
   const { settings } = context.request;
+  const most = mostOf(likeness, settings);
+  if (context.quantityId === 'detectable-fraction') return fractionBound(context, known, most);
   const seen = context.components.mismatch ?? likeness.mismatchOf(context.here, settings);
-  const { low, high } = mismatchBound(seen, known.map(({ mismatch }) => mismatch));
+  const { low, high } = mismatchBound(seen, known.map(({ mismatch }) => mismatch), most);
   const ends = [likeness.valueOf(low, settings), likeness.valueOf(high, settings)];
   return { low: Math.min(...ends), high: Math.max(...ends) };
 }

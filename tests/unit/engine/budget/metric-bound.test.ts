@@ -21,6 +21,13 @@ describe('the metric bound', () => {
     expect(mismatchBound(0.01, [])).toEqual({ low: expect.closeTo(0.01, 12) as number, high: expect.closeTo(0.01, 12) as number });
   });
 
+  it('ends where a mismatch ends: at 2, and at 1 for waveforms that are turned against each other', () => {
+    expect(mismatchBound(0.5, [0.4, 0.4]).high).toBe(2);
+    expect(mismatchBound(0.5, [0.4, 0.4], 1)).toEqual({ low: 0, high: 1 });
+    expect(mismatchBound(1.0000001, [], 1)).toEqual({ low: 1, high: 1 });
+    expect(mismatchBound(0.5, [Number.NaN]).high).toBeNaN();
+  });
+
   it('holds for any four unit vectors', () => {
     const random = seededRandom(5);
     const unit = (): number[] => {
@@ -83,6 +90,19 @@ describe('a match between runs of two simulations', () => {
     expect(one.metricBound!.missing).toContain('resolution of B');
     const none = completed('match', a, b, undefined);
     expect(none.metricBound).toEqual({ low: null, high: null, knownTo: [], missing: ['resolution of A', 'resolution of B', 'radius of A', 'radius of B'] });
+  });
+
+  it('stays among the numbers a match and an overlap can be, however badly the waveforms are known', () => {
+    const backwards = (given: Waveform, name: string): Waveform => ({ ...given, name, resolution: 2, content: { kind: 'modes', modes: given.content.kind === 'modes' ? given.content.modes.map(({ l, m, re, im }) => ({ l, m, re: re.toReversed(), im: im.toReversed() })) : [] } });
+    const unknown = new Map([['A', [backwards(a, 'A2')]], ['B', [backwards(b, 'B2')]]]);
+    const slack = (bound: Measurement['metricBound']): number => bound!.knownTo.reduce((sum, { mismatch }) => sum + Math.sqrt(mismatch), 0);
+    const match = completed('match', a, b, unknown);
+    expect((Math.sqrt(1 - match.points[0]!.value!) + slack(match.metricBound)) ** 2).toBeGreaterThan(1);
+    expect(match.metricBound).toMatchObject({ low: 0, high: 1 });
+    expect(match.budget.find(({ id }) => id === 'E05')!.u).toBeCloseTo(1 / (2 * Math.sqrt(3)), 12);
+    const overlap = completed('overlap', a, b, unknown);
+    expect((Math.sqrt(1 - overlap.points[0]!.value!) + slack(overlap.metricBound)) ** 2).toBeGreaterThan(2);
+    expect(overlap.metricBound!.low).toBe(-1);
   });
 
   it('leaves value, U and routes as they were', () => {
