@@ -33,6 +33,7 @@ const budgetLine = z.looseObject({
   u: nullable,
   note: z.string(),
   degreesOfFreedom: z.number().optional(),
+  shape: z.enum(['rectangular', 'normal']).optional(),
   share: nullable.optional(),
 });
 

@@ -75,9 +75,10 @@ function resultPoint({ claimed, measured, verdict }: Weighed): ResultPoint {
   };
 }
 
-const budgetLine = ({ component, id, group, u, note, degreesOfFreedom, share }: BudgetLine): BudgetLine => ({
+const budgetLine = ({ component, id, group, u, note, degreesOfFreedom, shape, share }: BudgetLine): BudgetLine => ({
   component, id, group, u: number(u), note,
   ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }),
+  ...(shape === undefined ? {} : { shape }),
   ...(share === undefined ? {} : { share: number(share) }),
 });
 

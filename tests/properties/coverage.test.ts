@@ -87,6 +87,14 @@ describe('near a physical bound', () => {
     expect(coverageOf(below, 1e-4, budget, { expanded: total.expanded }).state).toBe('understated');
   });
 
+  it('is drawn from the shape that a line gives, so that a bound reaches no further than it is wide', () => {
+    const wide = { low: 0, high: 1 };
+    const of = (shape: BudgetLine['shape']) => totalOf(0.02, [{ ...budget[0]!, u: 0.01, ...(shape ? { shape } : {}) }], wide).interval!;
+    expect(of('rectangular').high).toBeLessThan(0.02 + 0.01 * Math.sqrt(3));
+    expect(of('normal').high).toBeGreaterThan(0.02 + 0.01 * Math.sqrt(3));
+    expect(of(undefined)).toEqual(of('normal'));
+  });
+
   it('is not asked for far from any bound', () => {
     expect(totalOf(0.5, budget, { low: 0, high: 1 }).interval).toBeUndefined();
     expect(totalOf(0.5, [{ ...budget[0]!, u: 0 }], { low: 0, high: 0.5 }).interval).toBeUndefined();

@@ -28,7 +28,7 @@ function boundLine(kind: Kind, found: BoundFound): BudgetLine {
   const u = (interval.high - interval.low) / (2 * Math.sqrt(3));
   const known = knownTo.map(({ waveform, relative, mismatch: by }) => `${waveform} and ${relative} differ by a mismatch of ${Number(by.toPrecision(2))}`).join(', ');
   const between = `the number lies between ${Number(interval.low.toPrecision(5))} and ${Number.isFinite(interval.high) ? Number(interval.high.toPrecision(5)) : 'no upper bound'}`;
-  return { ...unavailable(kind), u: Number.isFinite(u) ? u : null, note: `${known}: ${between}. A bound, not a standard uncertainty; its width over 2√3.` };
+  return { ...unavailable(kind), u: Number.isFinite(u) ? u : null, shape: 'rectangular', note: `${known}: ${between}. A bound, not a standard uncertainty; its width over 2√3.` };
 }
 
 /** New lines take the place of the one with their id, and stand behind the others where there is none. */

@@ -5,7 +5,7 @@ import { monteCarloInterval, type Interval, type PhysicalRange } from './monte-c
 /** U of the computation: k = 2, since none of its sizes is itself estimated from a few numbers. */
 export const expandedOf = (standard: readonly number[]): number => combine(standard.map((u) => ({ u }))).expanded;
 
-/** Components found as a scatter, or as a size with a normal spread; all others are half-widths of rectangles. */
+/** Components found as a scatter, or as a size with a normal spread; all others are half-widths of rectangles, and a line may say otherwise. */
 const NORMAL = new Set(['E05', 'E15', 'E17']);
 
 /** From here on, or with a bound this near, the linear law is not enough (domain reference 5.2). */
@@ -46,7 +46,7 @@ export function totalOf(value: number | null, lines: readonly BudgetLine[], rang
   const missing = [...new Set(lines.filter((line) => !isKnown(line)).map(({ component }) => component))];
   if (known.length === 0) return { u: null, degreesOfFreedom: null, coverageFactor: 2, expanded: null, missing };
   const { u, degreesOfFreedom, coverageFactor, expanded } = combine(known);
-  const spreads = known.map((line) => ({ u: line.u, degreesOfFreedom: line.degreesOfFreedom, shape: NORMAL.has(line.id) ? ('normal' as const) : ('rectangular' as const) }));
+  const spreads = known.map((line) => ({ u: line.u, degreesOfFreedom: line.degreesOfFreedom, shape: line.shape ?? (NORMAL.has(line.id) ? ('normal' as const) : ('rectangular' as const)) }));
   const interval = value !== null && Number.isFinite(value) && needsDraws(value, u, range) ? monteCarloInterval(value, spreads, range) : null;
   return { u, degreesOfFreedom: Number.isFinite(degreesOfFreedom) ? degreesOfFreedom : null, coverageFactor, expanded, ...(interval ? { interval } : {}), missing };
 }

@@ -14,6 +14,8 @@ export interface BudgetLine {
   readonly note: string;
   /** How well u is known; absent where it is taken as exact. */
   readonly degreesOfFreedom?: number;
+  /** How it is spread, where that differs from what is usual for its id: a bound is a rectangle whatever it bounds. */
+  readonly shape?: 'rectangular' | 'normal';
   /** Part of the variance of all that is known; null where u is. */
   readonly share?: number | null;
 }

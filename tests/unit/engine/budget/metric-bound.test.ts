@@ -80,6 +80,7 @@ describe('a match between runs of two simulations', () => {
     const line = (id: string) => found.budget.find((each) => each.id === id)!;
     expect(line('E05').u).toBeCloseTo((found.metricBound!.high! - found.metricBound!.low!) / (2 * Math.sqrt(3)), 9);
     expect(line('E05').note).toContain('A bound, not a standard uncertainty');
+    expect(line('E05').shape).toBe('rectangular');
     expect(line('E06')).toMatchObject({ u: null, share: null });
   });
 
