@@ -29,35 +29,62 @@ const realNames = /^(r|re|real)$/i;
 const imaginaryNames = /^(i|im|imag|imaginary)$/i;
 
 /** Complex numbers as records of two like fields, as most writers store them. */
-function pairOf(meta: Metadata): ElementType | null {
+function pairOf(meta: Metadata): ElementType | string | null {
   const [first, second, ...more] = meta.compound_type?.members ?? [];
   if (!first || !second || more.length > 0) return null;
   const [base, other] = [baseOf(first), baseOf(second)];
   if (!base || base !== other || !realNames.test(first.name) || !imaginaryNames.test(second.name)) return null;
-  return { base, littleEndian: orderOf(meta, first.littleEndian), size: meta.size, firstAt: first.offset, secondAt: second.offset };
+  if (first.littleEndian !== second.littleEndian) return `complex numbers whose two parts are stored in unequal orders of bytes (${first.name}, ${second.name})`;
+  const littleEndian = orderOf(meta, first);
+  return littleEndian === null ? unsure(meta) : { base, littleEndian, size: meta.size, firstAt: first.offset, secondAt: second.offset };
 }
 
 function fieldOf(meta: Metadata, field: string): ElementType | string {
   const members = meta.compound_type?.members ?? [];
   const member = members.find(({ name }) => name === field);
-  if (!member) return members.length > 0 ? `records without a field of that name (${members.slice(0, 8).map(({ name }) => name).join(', ')})` : `${typeWords(meta)} without fields`;
+  if (!member) return members.length > 0 ? `records without a field of that name (${fieldNames(meta)})` : `${typeWords(meta)} without fields`;
   const base = baseOf(member);
-  return base ? { base, littleEndian: orderOf(meta, member.littleEndian), size: meta.size, firstAt: member.offset, secondAt: null } : typeWords(member);
+  if (!base) return typeWords(member);
+  const littleEndian = orderOf(meta, member);
+  return littleEndian === null ? unsure(meta) : { base, littleEndian, size: meta.size, firstAt: member.offset, secondAt: null };
 }
 
-/** Records in one order are turned as a whole; in mixed order they come as they were stored. */
-function orderOf(meta: Metadata, ownOrder: boolean): boolean {
-  const orders = (meta.compound_type?.members ?? []).filter(({ size }) => size > 1).map(({ littleEndian }) => littleEndian);
-  return orders.includes(true) && orders.includes(false) ? ownOrder : true;
+type Member = NonNullable<Metadata['compound_type']>['members'][number];
+
+/**
+ * The order in which the library hands over one field. It turns a record whose members are all
+ * big-endian, as a whole, and leaves every other as it was stored; members of one byte count with
+ * the order that their type names. Null when it cannot be told what it does.
+ */
+function orderOf(meta: Metadata, own: Member): boolean | null {
+  if (own.littleEndian) return true;
+  const orders = (meta.compound_type?.members ?? []).map(storedOrder);
+  if (orders.includes('little')) return false;
+  return orders.every((order) => order === 'big' || order === 'none') ? true : null;
 }
+
+function storedOrder({ type, littleEndian }: Member): 'little' | 'big' | 'none' | 'unknown' {
+  if (type === whole || type === float) return littleEndian ? 'little' : 'big';
+  // Text of fixed length has no order; that of any length counts as its bytes do.
+  if (type === string) return littleEndian ? 'little' : 'none';
+  // A truth value is an enumeration of one little-endian byte. The library cannot turn one that is big-endian.
+  return type === enumeration && littleEndian ? 'little' : 'unknown';
+}
+
+const unsure = (meta: Metadata): string => `big-endian numbers in records with a part that cannot be turned beside them (${fieldNames(meta)})`;
+
+const longestName = 60;
+const fieldNames = (meta: Metadata): string => (meta.compound_type?.members ?? []).slice(0, 8).map(({ name }) => (name.length > longestName ? `${name.slice(0, longestName)}…` : name)).join(', ');
 
 export function typeWords(meta: Metadata): string {
   const base = baseOf(meta);
   if (base) return `${base.startsWith('f') ? 'real' : 'whole'} numbers of ${meta.size} bytes`;
-  if (meta.type === complexClass || pairOf(meta)) return `complex numbers of ${meta.size} bytes`;
+  const pair = pairOf(meta);
+  if (typeof pair === 'string') return pair;
+  if (meta.type === complexClass || pair) return `complex numbers of ${meta.size} bytes`;
   if (meta.type === float || meta.type === whole) return `numbers of ${meta.size} bytes`;
   if (meta.type === string) return 'text';
   if (meta.type === enumeration) return 'named values';
-  if (meta.type === compound) return `records (${(meta.compound_type?.members ?? []).slice(0, 8).map(({ name }) => name).join(', ')})`;
+  if (meta.type === compound) return `records (${fieldNames(meta)})`;
   return 'something that is not numbers';
 }
