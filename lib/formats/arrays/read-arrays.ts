@@ -26,6 +26,8 @@ export async function readArrays(file: string, wish: SeriesWish, openFile: OpenF
   const series = await seriesOf(file, wish, (name) => bounded(openFile(name)), readHdf5);
   if (!series.ok) return series;
   const { columns, tables } = series.value;
+  const short = tables.flatMap((table) => fewSamples(file, table));
+  if (short.length > 0) return err(short);
   return ok({ columns, tables: tables.map((table) => ({ table: numberTable(file, table), mode: table.mode })) });
 }
 
@@ -40,6 +42,13 @@ async function seriesOf(file: string, wish: SeriesWish, open: OpenFile, readHdf5
   } finally {
     await npz.value.close();
   }
+}
+
+/** As a text file, whose parser says the same. */
+function fewSamples(file: string, { dataset, columns }: SeriesTable): Problem[] {
+  const samples = columns[0]!.length;
+  if (samples >= 2) return [];
+  return [{ code: 'formats/too-few-rows', where: dataset === '' ? file : `${file}:${dataset}`, saw: samples === 1 ? '1 sample' : 'no samples', expected: 'at least two samples' }];
 }
 
 const notHere = (file: string): Problem => ({ code: 'formats/not-read-here', where: file, saw: 'an HDF5 file', expected: 'text, .npy or .npz for a first look in the browser', hint: 'Attach it and run the check: the server reads it.' });

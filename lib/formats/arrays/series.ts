@@ -127,6 +127,14 @@ const partsOf = ({ format, parts }: ArrayLayout): readonly ArrayPart[] => (forma
 const modeColumns = (declared: readonly Column[]): Column[] => [axisColumn(declared), ...valueColumns(declared)];
 const valueColumns = (declared: readonly Column[]): Column[] => declared.filter(({ role }) => role.kind !== 'axis' && role.kind !== 'skip');
 
+/** For each value column of the sheet, the half of a complex number that it is: 0 for re, 1 for im. */
+function complexParts({ declared }: PartReader, where: string, saw: string): Result<number[], Problem[]> {
+  const values = valueColumns(declared);
+  const parts = values.map(({ role }) => ['re', 'im'].indexOf(role.kind));
+  if (parts.length === 2 && parts.includes(0) && parts.includes(1)) return ok(parts);
+  return refusal('formats/array-shape', where, saw, `real columns, since "columns" says ${values.map(({ name }) => name).join(', ')}`, 'Complex numbers are re and im of one mode: say so under "columns", or leave "columns" out.');
+}
+
 async function readMode(reader: PartReader, path: string, mode: ModeIndex | null): Read<SeriesTable> {
   const facts = await reader.room.source.facts(path);
   if (!facts.ok) return facts;
@@ -134,11 +142,12 @@ async function readMode(reader: PartReader, path: string, mode: ModeIndex | null
   const where = reader.room.where(path);
   const done = (axis: Float64Array, columns: readonly Float64Array[]): Result<SeriesTable, never> => ok({ dataset: path, mode, columns: [axis, ...columns], digits });
   if (complex && shape.length === 1) {
-    if (valueColumns(reader.declared).some(({ role }) => role.kind === 'amplitude')) return refusal('formats/array-shape', where, shapeText(shape, complex), 'amplitude and phase, as "columns" says');
+    const parts = complexParts(reader, where, shapeText(shape, complex));
+    if (!parts.ok) return parts;
     const axis = axisOf(reader, shape[0]!, path);
     if (!axis.ok) return axis;
     const read = await reader.room.read(path, facts.value, { samples: 0, series: null, pair: null });
-    return read.ok ? done(axis.value, read.value) : read;
+    return read.ok ? done(axis.value, parts.value.map((part) => read.value[part]!)) : read;
   }
   const inside = columnsInside(reader, shape, complex);
   if (inside === null) return refusal('formats/array-shape', where, shapeText(shape, complex), expectedMode(reader), hintFor(shape, complex, reader));
@@ -177,6 +186,8 @@ async function readData(reader: PartReader, data: ArrayPart): Read<Series> {
   const where = reader.room.where(data.path);
   const paired = !complex && shape.length === 3 && shape[2] === 2;
   if (!paired && !(complex && shape.length === 2)) return refusal('formats/array-shape', where, shapeText(shape, complex), 'L×N complex numbers, or L×N×2 real ones');
+  const parts = complexParts(reader, where, shapeText(shape, complex));
+  if (!parts.ok) return parts;
   const modes = await modesArray(reader, data.path);
   if (!modes.ok) return modes;
   const alongSecond = shape[0] === modes.value.length;
@@ -186,7 +197,7 @@ async function readData(reader: PartReader, data: ArrayPart): Read<Series> {
   if (!axis.ok) return axis;
   const read = await reader.room.read(data.path, facts.value, { samples, series, pair: paired ? 2 : null });
   if (!read.ok) return read;
-  const tables = modes.value.map((mode, i): SeriesTable => ({ dataset: data.path, mode, columns: [axis.value, read.value[2 * i]!, read.value[2 * i + 1]!], digits }));
+  const tables = modes.value.map((mode, i): SeriesTable => ({ dataset: data.path, mode, columns: [axis.value, ...parts.value.map((part) => read.value[2 * i + part]!)], digits }));
   return ok({ columns: modeColumns(reader.declared), tables });
 }
 

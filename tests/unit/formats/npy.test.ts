@@ -27,6 +27,14 @@ describe('an .npy is read as numpy wrote it', () => {
     expect(mode).toEqual(['2,2', expect.toSatisfy((x: number) => x < within)]);
   });
 
+  it('complex numbers as re and im, in whichever order the sheet names them', async () => {
+    const [vector] = modesAndErrors(await file('complex.npy', { columns: ['t', 'im', 're'], time: { start: 0, step: 0.25 }, mode: [2, 2] }));
+    expect(vector).toEqual(['2,2', expect.toSatisfy((x: number) => x < 1e-15)]);
+    const all = modesAndErrors(await file('modes.npz', { columns: ['t', 'im', 're'] }));
+    expect(all.map(([mode, far]) => [mode, far < 1e-15])).toEqual([['2,-2', true], ['2,2', true], ['3,3', true]]);
+    expect((await file('modes.npz', { columns: ['t', 'amplitude', 'phase'] })).problems).toEqual([expect.stringContaining('modes.npz:data: saw 3×40 complex; expected real columns, since "columns" says amplitude, phase.')]);
+  });
+
   it.each(['whole-i4.npy', 'whole-i8.npy'])('%s, whole numbers', async (name) => {
     const { waveform } = await file(name, { columns: ['t', 'plus', 'cross'] });
     expect(waveform?.content.kind === 'line-of-sight' && [waveform.content.plus[7], waveform.content.cross?.[7]]).toEqual([2, -7]);
@@ -70,6 +78,22 @@ describe('an .npy is refused with its reason', () => {
     ['whose header is code', withShape("__import__('os')", three), 'expected a header with descr, fortran_order and shape'],
   ])('%s', async (_what, bytes, words) => {
     expect((await bytesAs('a.npy', bytes)).problems).toEqual([expect.stringContaining(words)]);
+  });
+
+  it.each([
+    ['a (0, 3) array', withShape('(0, 3)', three).subarray(0, 128), {}, 'saw no samples; expected at least two samples.'],
+    ['a (1, 3) array', withShape('(1, 3)', three).subarray(0, 152), {}, 'saw 1 sample; expected at least two samples.'],
+    ['an empty vector', withShape('(0,)', fixture('complex.npy')).subarray(0, 128), { columns: ['t', 'plus'], time: { start: 0, step: 1 } }, 'saw 0'],
+  ])('when it is %s', async (_what, bytes, raw, words) => {
+    expect((await bytesAs('a.npy', bytes, raw)).problems).toEqual([expect.stringContaining(words)]);
+  });
+
+  it.each<[readonly string[], string]>([
+    [['t', 'plus', 'cross'], 'plus, cross'],
+    [['t', 'amplitude', 'phase'], 'amplitude, phase'],
+    [['t', 're22', 'im22', 're33', 'im33'], 're22, im22, re33, im33'],
+  ])('when it is complex and the sheet says %j', async (columns, named) => {
+    expect((await file('complex.npy', { columns, time: { start: 0, step: 0.25 } })).problems).toEqual([`complex.npy: saw 40 complex; expected real columns, since "columns" says ${named}. Complex numbers are re and im of one mode: say so under "columns", or leave "columns" out.`]);
   });
 
   it('when it has other columns than the sheet says', async () => {

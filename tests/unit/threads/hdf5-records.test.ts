@@ -27,3 +27,10 @@ describe('big-endian fields of records', () => {
     ]);
   });
 });
+
+const empty = inPieces({ 'e.h5': fixture('empty.h5') });
+
+it('a dataset without samples is refused, as a text without rows is', async () => {
+  const { problems } = await open({ file: 'e.h5', datasets: { '2,2': '/none' } }, empty, readHdf5);
+  expect(problems).toEqual(['e.h5:/none: saw no samples; expected at least two samples.']);
+});
