@@ -29,19 +29,23 @@ export function attributesOf({ h5, id }: OneFile, path: string, most = 64): Attr
   });
 }
 
+/** Names under which writers keep such lists. A list under another name must say itself that it is one. */
+const tellingNames = /^(modes|columns|lm)$/i;
+const fullForm = /^\s*(l\d{1,2}_m-?\d{1,2}|\(?\d{1,2}\s*,\s*-?\d{1,2}\)?)\s*$/;
+
 /** Modes listed by one attribute, as L×2 whole numbers or as names such as l2_m2. Null when no or more than one attribute does. */
 export function listedModes(attributes: readonly AttributeValue[]): ModeIndex[] | null {
-  const lists = attributes.flatMap(({ shape, values }) => {
-    const modes = shape && values ? modesIn(shape, values) : null;
+  const lists = attributes.flatMap(({ name, shape, values }) => {
+    const modes = shape && values ? modesIn(shape, values, tellingNames.test(name)) : null;
     return modes ? [modes] : [];
   });
   return lists.length === 1 ? lists[0]! : null;
 }
 
-function modesIn(shape: readonly number[], values: readonly (number | string)[]): ModeIndex[] | null {
+function modesIn(shape: readonly number[], values: readonly (number | string)[], told: boolean): ModeIndex[] | null {
   const listed = values.filter((v) => typeof v === 'number');
-  if (shape.length === 2 && shape[1] === 2 && listed.length === values.length && listed.length === 2 * shape[0]!)
+  if (told && shape.length === 2 && shape[1] === 2 && listed.length === values.length && listed.length === 2 * shape[0]!)
     return Array.from({ length: shape[0]! }, (_, i): ModeIndex => [listed[2 * i]!, listed[2 * i + 1]! + 0]);
-  const named = values.map((v) => (typeof v === 'string' ? modeFromName(v) : null));
+  const named = values.map((v) => (typeof v === 'string' && (told || fullForm.test(v)) ? modeFromName(v) : null));
   return shape.length === 1 && named.every((mode) => mode !== null) ? named : null;
 }

@@ -2,6 +2,7 @@ import { closeSync, fstatSync, openSync, readSync } from 'node:fs';
 import { afterAll, describe, expect, it } from 'vitest';
 import { readSeries } from '@/lib/formats/arrays/series';
 import { modeFromName } from '@/lib/formats/arrays/mode-name';
+import { listedModes } from '@/lib/formats/hdf5/attributes';
 import { blocksOf } from '@/lib/formats/hdf5/blocks';
 import type { ReadHdf5 } from '@/lib/formats/hdf5/hdf5-ask';
 import { hdf5Source } from '@/lib/formats/hdf5/hdf5-source';
@@ -10,7 +11,7 @@ import { openOneFile } from '@/lib/formats/hdf5/one-file';
 import { parseSelection } from '@/lib/formats/hdf5/selection';
 import { fixture, fixturePath, inPieces, modesAndErrors, open } from './array-waves';
 
-// One thread reads one file; this one reads the file of all layouts, so that each test costs no thread.
+// One thread reads one file; this one reads the files here one by one, so that each test costs no thread.
 const descriptor = openSync(fixturePath('layouts.h5'), 'r');
 afterAll(() => closeSync(descriptor));
 const one = openOneFile({ size: fstatSync(descriptor).size, read: (into, at) => readSync(descriptor, into, 0, into.length, at) });
@@ -89,6 +90,21 @@ describe('what a file holds is listed', () => {
     expect(at('/all')).toMatchObject({ complex: true, attributes: [{ name: 'modes', value: '2, 2, 2, -2, 3, 3' }] });
     expect(at('/table')).toMatchObject({ type: 'records (when, flag, re, im)', refusal: null });
     expect(at('/words')?.refusal).toContain('saw text');
+  });
+});
+
+describe('an attribute lists modes', () => {
+  const flat = (name: string, values: (number | string)[], shape = [values.length]) => ({ name, shape, values });
+  it.each<[string, Parameters<typeof listedModes>[0][number], string | null]>([
+    ['when it is called so', flat('modes', [2, 2, 2, -2], [2, 2]), '2,2,2,-2'],
+    ['when it is called so, with names', flat('Columns', ['h22', 'h2-1']), '2,2,2,-1'],
+    ['when its values have the full form', flat('labels', ['l2_m2', 'l3_m-3']), '2,2,3,-3'],
+    ['when its values are pairs', flat('labels', ['2,2', '(3, -3)']), '2,2,3,-3'],
+    ['never as a version', flat('version', ['v21']), null],
+    ['never as a size', flat('size', [2, 1], [1, 2]), null],
+    ['never as a longer text', flat('source', ['run l2_m2.dat']), null],
+  ])('%s', (_what, attribute, modes) => {
+    expect(listedModes([attribute])?.flat().join(',') ?? null).toBe(modes);
   });
 });
 
