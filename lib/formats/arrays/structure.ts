@@ -19,4 +19,33 @@ export interface StructureEntry {
   readonly refusal: string | null;
 }
 
-export const structureLimits = { entries: 2000, depth: 32, valueLength: 200 };
+export const structureLimits = { entries: 2000, depth: 32, valueLength: 200, pathLength: 1000, bytes: 2 ** 20 };
+
+/** Entries as they are found, until they are as many, or as long, as an answer may be. */
+export class Listing {
+  readonly entries: StructureEntry[] = [];
+  private bytes = 0;
+  cut = false;
+
+  get full(): boolean {
+    return this.entries.length >= structureLimits.entries || this.bytes >= structureLimits.bytes;
+  }
+
+  /** A path that is cut short would name nothing: what has too long a one is left out. */
+  takes(path: string): boolean {
+    if (path.length <= structureLimits.pathLength) return true;
+    this.cut = true;
+    return false;
+  }
+
+  add(entry: StructureEntry): void {
+    const bytes = new TextEncoder().encode(JSON.stringify(entry)).length + 1;
+    if (this.bytes + bytes > structureLimits.bytes) {
+      this.bytes = structureLimits.bytes;
+      this.cut = true;
+      return;
+    }
+    this.bytes += bytes;
+    this.entries.push(entry);
+  }
+}

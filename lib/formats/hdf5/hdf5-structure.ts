@@ -1,5 +1,5 @@
 import { formatProblem } from '@/lib/kernel/problem';
-import { structureLimits, type ArrayStructure, type StructureEntry } from '../arrays/structure';
+import { Listing, structureLimits, type ArrayStructure, type StructureEntry } from '../arrays/structure';
 import { attributesOf } from './attributes';
 import { readableDataset } from './dataset';
 import { faultOf } from './hdf5-faults';
@@ -8,16 +8,15 @@ import { typeWords } from './stored-type';
 
 /** Groups and datasets in the file's own order. A group met twice is listed once, so that a circle ends. */
 export function hdf5Structure(one: OneFile): ArrayStructure {
-  const walk: Walk = { one, entries: [], seen: new Set(), cut: false };
-  visit(walk, '/', 0);
-  return { format: 'hdf5', entries: walk.entries, cut: walk.cut };
+  const listing = new Listing();
+  visit({ one, listing, seen: new Set() }, '/', 0);
+  return { format: 'hdf5', entries: listing.entries, cut: listing.cut };
 }
 
 interface Walk {
   readonly one: OneFile;
-  readonly entries: StructureEntry[];
+  readonly listing: Listing;
   readonly seen: Set<string>;
-  cut: boolean;
 }
 
 function visit(walk: Walk, group: string, depth: number): void {
@@ -26,32 +25,33 @@ function visit(walk: Walk, group: string, depth: number): void {
   if (walk.seen.has(identity)) return;
   walk.seen.add(identity);
   for (const name of h5.get_names(id, group, false)) {
-    if (walk.entries.length >= structureLimits.entries || depth >= structureLimits.depth) {
-      walk.cut = true;
+    if (walk.listing.full || depth >= structureLimits.depth) {
+      walk.listing.cut = true;
       return;
     }
     const path = `${group === '/' ? '' : group}/${name}`;
+    if (!walk.listing.takes(path)) continue;
     const isGroup = list(walk, path);
     if (isGroup) visit(walk, path, depth + 1);
   }
 }
 
 function list(walk: Walk, path: string): boolean {
-  const { one, entries } = walk;
+  const { one, listing } = walk;
   const { h5, id } = one;
   const before = one.reachedFor.length;
   const nothing = { shape: null, complex: false, type: '', attributes: [], refusal: null };
   try {
     const type = h5.get_type(id, path);
     if (type === h5.H5G_GROUP) {
-      entries.push({ ...nothing, path, kind: 'group', attributes: shownAttributes(one, path) });
+      listing.add({ ...nothing, path, kind: 'group', attributes: shownAttributes(one, path) });
       return true;
     }
-    if (type === h5.H5G_DATASET) entries.push(datasetEntry(one, path));
+    if (type === h5.H5G_DATASET) listing.add(datasetEntry(one, path));
     if (type === h5.H5G_UDLINK) throw new Error('a link to another file');
   } catch (thrown) {
     const outside = one.reachedFor.length > before || isExternal(one, path);
-    entries.push({ ...nothing, path, kind: 'dataset', refusal: formatProblem(faultOf(thrown, '', outside ? [path] : [])) });
+    listing.add({ ...nothing, path, kind: 'dataset', refusal: formatProblem(faultOf(thrown, '', outside ? [path] : [])) });
   }
   return false;
 }

@@ -2,7 +2,7 @@ import { Reader } from '@zip.js/zip.js';
 import { formatProblem, type Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import type { ArrayFacts } from '../arrays/array-source';
-import { structureLimits, type ArrayStructure, type StructureEntry } from '../arrays/structure';
+import { Listing, type ArrayStructure, type StructureEntry } from '../arrays/structure';
 import { readNpyFacts } from './npy-stream';
 import { openNpzReader } from './npz-source';
 
@@ -23,10 +23,15 @@ export async function npzStructure(file: string, bytes: Jumping): Promise<Result
   const npz = await openNpzReader(file, new JumpingReader(bytes));
   if (!npz.ok) return npz;
   try {
-    const entries: StructureEntry[] = [];
-    const names = npz.value.names.slice(0, structureLimits.entries);
-    for (const name of names) entries.push(entryOf(name, await npz.value.facts(name)));
-    return ok({ format: 'npz', entries, cut: names.length < npz.value.names.length });
+    const listing = new Listing();
+    for (const name of npz.value.names) {
+      if (listing.full) {
+        listing.cut = true;
+        break;
+      }
+      if (listing.takes(name)) listing.add(entryOf(name, await npz.value.facts(name)));
+    }
+    return ok({ format: 'npz', entries: listing.entries, cut: listing.cut });
   } finally {
     await npz.value.close();
   }

@@ -40,6 +40,18 @@ describe('a hostile HDF5 file never hurts its reader', () => {
     expect(entries.filter(({ path, refusal }) => /^\/(virtual|elsewhere|elsewhere-data|dangling|round|about)$/.test(path) && refusal === null)).toEqual([]);
   });
 
+  it('what would make a long list is cut to an answer of moderate length', async () => {
+    const bytes = fixture('long.h5');
+    const found = await readStructure('l.h5', 'hdf5', inPieces({ 'l.h5': bytes })('l.h5'));
+    if (!found.ok) throw new Error(found.error.map(formatProblem).join());
+    const { entries, cut } = found.value;
+    expect(cut).toBe(true);
+    expect(entries.length).toBeGreaterThan(30);
+    expect(Buffer.byteLength(JSON.stringify(found.value))).toBeLessThan(1.01 * 2 ** 20);
+    expect(Math.max(...entries.flatMap(({ path, type, refusal }) => [path.length, type.length, refusal?.length ?? 0]))).toBeLessThan(1001);
+    expect(entries.find(({ path }) => path === '/fields')?.type).toBe(`records (${'f'.repeat(60)}…, re)`);
+  });
+
   it('a packed bomb ends at the memory that its thread may have', async () => {
     const narrow = readHdf5Within({ ...hdf5Limits, memoryBytes: 64 * 2 ** 20 });
     const { problems } = await open({ file: 'b.h5', datasets: { '2,2': '/bomb' } }, inPieces({ 'b.h5': fixture('bomb.h5') }), narrow);
