@@ -222,7 +222,7 @@ describe('a long signal from a short record', () => {
   beforeAll(async () => void (claims = await runFolder(folder('long-signal'))), 300_000);
   it('recomputes 42.7 with the restricted amplitude, and the horizon of this record, 0.001 beyond that of a longer one', () => {
     expect(values('C1')[0]).toAgreeWith(42.7, { relative: 1e-3 });
-    expect(claims.get('C1')?.budget.find(({ id }) => id === 'E11')?.note).toMatch(/-3\.\d+ %/);
+    expect(claims.get('C1')?.budget.find(({ id }) => id === 'E11')?.note).toMatch(/−3\.\d+ %/);
     expect(values('C2')[0]).toAgreeWith(1.143407, 1e-5);
     expect([...claims.values()].map(({ verdict }) => verdict)).toEqual(['agrees', 'agrees']);
   });

@@ -1,17 +1,18 @@
 import type { BudgetLine, Measurement } from '../contract/measurement';
-import type { MeasureRequest, Quantity, Watch } from '../contract/quantity';
+import { unitOf, type MeasureRequest, type Quantity, type Watch } from '../contract/quantity';
 import type { DeclaredSettings } from '../contract/settings';
 import { mismatch } from '../quantities/mismatch';
 import { overlap } from '../quantities/overlap';
 import { worstIndex } from './chosen-points';
 import { isMatchLike, metricBound, type BoundFound } from './metric-bound';
+import { numeral, withUnit } from './numeral';
 import { simulationLine, unavailable, waveformsOf, type Kind } from './relatives';
 import { rerunner, type Measured, type Rerun } from './rerun';
 import { sensitivitiesOf } from './sensitivities';
 import { withShares } from './total';
 import { variedLines } from './varied-lines';
 
-type Completing = Measured & Pick<Quantity, 'naturalTolerance'>;
+type Completing = Measured & Pick<Quantity, 'naturalTolerance' | 'unit' | 'follows'>;
 
 const ID = { resolution: 'E05', radius: 'E06' } as const;
 
@@ -21,13 +22,13 @@ function pinned({ settings }: Measurement, point: Measurement['points'][number])
   return typeof top === 'number' ? { fHighHz: top } : {};
 }
 
-function boundLine(kind: Kind, found: BoundFound): BudgetLine {
+function boundLine(kind: Kind, found: BoundFound, unit: string): BudgetLine {
   const alone = found.alone[kind];
   if (alone === null) return unavailable(kind, found.bound.missing.filter((what) => what.startsWith(kind)).map((what) => `no other ${what}`).join(', '));
   const { interval, knownTo } = alone;
   const u = (interval.high - interval.low) / (2 * Math.sqrt(3));
-  const known = knownTo.map(({ waveform, relative, mismatch: by }) => `${waveform} and ${relative} differ by a mismatch of ${Number(by.toPrecision(2))}`).join(', ');
-  const between = `the number lies between ${Number(interval.low.toPrecision(5))} and ${Number.isFinite(interval.high) ? Number(interval.high.toPrecision(5)) : 'no upper bound'}`;
+  const known = knownTo.map(({ waveform, relative, mismatch: by }) => `${waveform} and ${relative} differ by a mismatch of ${numeral(by)}`).join(', ');
+  const between = `the number lies between ${numeral(interval.low, 5)} and ${Number.isFinite(interval.high) ? withUnit(interval.high, unit, 5) : 'no upper bound'}`;
   return { ...unavailable(kind), u: Number.isFinite(u) ? u : null, shape: 'rectangular', note: `${known}: ${between}. A bound, not a standard uncertainty; its width over 2√3.` };
 }
 
@@ -53,15 +54,15 @@ function boundOf({ quantity, request, measurement, index, here, rerun, watch }: 
 }
 
 function simulationLines(context: Context, found: BoundFound | null): BudgetLine[] {
-  const { request, measurement, index, here, rerun } = context;
+  const { quantity, request, measurement, index, here, rerun } = context;
   const own = measurement.budget.filter(({ id, u }) => (id === ID.resolution || id === ID.radius) && u !== null).map(({ id }) => id);
   if (waveformsOf(request.inputs).length === 0) return [];
   const band = pinned(measurement, measurement.points[index]!);
   const sameBand: Rerun = (change) => rerun({ ...change, settings: { ...band, ...change.settings } });
   return (['resolution', 'radius'] as const).flatMap((kind) => {
     if (own.includes(ID[kind])) return [];
-    if (found !== null) return request.inputs.relatives === undefined ? [unavailable(kind)] : [boundLine(kind, found)];
-    return [simulationLine(kind, request.inputs, here, sameBand, request.settings.formalOrder ?? null)];
+    if (found !== null) return request.inputs.relatives === undefined ? [unavailable(kind)] : [boundLine(kind, found, unitOf(quantity, request.settings))];
+    return [simulationLine(kind, request.inputs, here, sameBand, request.settings.formalOrder ?? null, unitOf(quantity, request.settings))];
   });
 }
 
@@ -83,7 +84,7 @@ export function completeMeasurement(quantity: Completing, request: MeasureReques
   const context: Context = { quantity, request, measurement, index, here, rerun, watch };
   const found = isMatchLike(quantity.id) ? boundOf(context) : null;
   const components = measurement.points[index]?.components ?? {};
-  const varied = variedLines({ quantityId: quantity.id, allowed: quantity.settings, request, measurement, here, rerun }, components);
+  const varied = variedLines({ quantityId: quantity.id, unit: unitOf(quantity, request.settings), allowed: quantity.settings, request, measurement, here, rerun }, components);
   const budget = withShares(merged(measurement.budget, [...simulationLines(context, found), ...varied]));
   const sensitivities = request.withFigures ? sensitivitiesOf({ request, measurement, index, here, rerun }) : undefined;
   return { ...measurement, budget, ...(found ? { metricBound: found.bound } : {}), ...(sensitivities ? { sensitivities } : {}) };

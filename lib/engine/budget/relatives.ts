@@ -2,6 +2,7 @@ import type { BudgetLine } from '../contract/measurement';
 import type { QuantityInputs } from '../contract/quantity';
 import type { Waveform } from '../contract/waveform';
 import { areal } from './areal-radius';
+import { withUnit } from './numeral';
 import type { Rerun } from './rerun';
 import { radiusError, togetherAs, truncationError, type Part, type RunNumber, type SimulationError } from './simulation-error';
 
@@ -43,13 +44,13 @@ export const unavailable = (kind: Kind, reason: string = DESCRIBED[kind].one): B
   return { component, id, group: 'coverage', u: null, note: `Not available: ${reason}.` };
 };
 
-function partOf(kind: Kind, waveform: Waveform, relatives: readonly Waveform[], here: number, rerun: Rerun, formalOrder: number | null): SimulationError | null {
+function partOf(kind: Kind, waveform: Waveform, relatives: readonly Waveform[], here: number, rerun: Rerun, formalOrder: number | null, unit: string): SimulationError | null {
   const runs: RunNumber[] = [{ value: here, place: placeOf(kind, waveform)!, isOwn: true }];
   for (const relative of relatives) {
     const value = rerun({ waveform: (given) => (given === waveform ? relative : given) });
     if (value !== null) runs.push({ value, place: placeOf(kind, relative)!, isOwn: false });
   }
-  return kind === 'resolution' ? truncationError(runs, formalOrder) : radiusError(runs);
+  return kind === 'resolution' ? truncationError(runs, formalOrder, unit) : radiusError(runs, unit);
 }
 
 /**
@@ -60,20 +61,20 @@ function partOf(kind: Kind, waveform: Waveform, relatives: readonly Waveform[], 
  * Fails:  null with the reason where one of the waveforms has no other run, or none gives a number.
  * Source: domain reference 5.1.
  */
-export function simulationLine(kind: Kind, inputs: QuantityInputs, here: number, rerun: Rerun, formalOrder: number | null): BudgetLine {
+export function simulationLine(kind: Kind, inputs: QuantityInputs, here: number, rerun: Rerun, formalOrder: number | null, unit: string): BudgetLine {
   const waveforms = waveformsOf(inputs);
   const parts: Part[] = [];
   const without: string[] = [];
   for (const waveform of waveforms) {
     const relatives = relativesOf(kind, waveform, inputs);
-    const error = relatives.length === 0 ? null : partOf(kind, waveform, relatives, here, rerun, formalOrder);
+    const error = relatives.length === 0 ? null : partOf(kind, waveform, relatives, here, rerun, formalOrder, unit);
     if (error === null) without.push(waveform.name);
     else parts.push({ from: waveform.series ?? waveform.name, error });
   }
   if (parts.length === 0) return unavailable(kind);
   const { component, id, one } = DESCRIBED[kind];
   const together = togetherAs(id, parts);
-  if (without.length > 0) return unavailable(kind, `${one} of ${without.join(', ')}; of ${parts.map(({ from }) => from).join(', ')} alone ${Number(together.u.toPrecision(2))}`);
+  if (without.length > 0) return unavailable(kind, `${one} of ${without.join(', ')}; of ${parts.map(({ from }) => from).join(', ')} alone ${withUnit(together.u, unit)}`);
   const { u, degreesOfFreedom, note } = together;
   return { component, id, group: 'coverage', u, note, ...(degreesOfFreedom === undefined ? {} : { degreesOfFreedom }) };
 }

@@ -1,6 +1,7 @@
 import { combine, sharedCorrelation, type Term } from './combine';
 import { fitInInverseRadius } from '../extrapolation/radius-fit';
 import { orderOfValues, richardsonValue } from '../extrapolation/richardson';
+import { numeral, withUnit } from './numeral';
 
 /** A number computed from one run of a simulation. */
 export interface RunNumber {
@@ -25,8 +26,6 @@ const [LOWEST_ORDER, HIGHEST_ORDER] = [1, 8];
 const SAFETY_BY_ORDER = 1.25;
 const SAFETY_BY_DIFFERENCE = 3;
 
-const short = (x: number, digits = 2): string => String(Number(x.toPrecision(digits)));
-
 /** Finer by less than this is the same grid. */
 const SAME = 1e-9;
 
@@ -46,7 +45,7 @@ const isFormal = (order: number, formal: number | null): boolean => (formal === 
  * Fails:  null for fewer than two spacings.
  * Source: domain reference 5.1 and Q20; grid-convergence practice for the factors.
  */
-export function truncationError(given: readonly RunNumber[], formalOrder: number | null): SimulationError | null {
+export function truncationError(given: readonly RunNumber[], formalOrder: number | null, unit: string): SimulationError | null {
   const runs = distinct(given, (p, q) => q.place - p.place);
   const own = runs.find((run) => run.isOwn);
   if (runs.length < 2 || own === undefined) return null;
@@ -57,19 +56,19 @@ export function truncationError(given: readonly RunNumber[], formalOrder: number
     const order = orderOfValues([coarsest.value, middle.value, finest.value], [coarsest.place, middle.place, finest.place]);
     if (order.ok && isFormal(order.value, formalOrder)) {
       const limit = richardsonValue(middle.value, finest.value, middle.place, finest.place, order.value);
-      return { u: SAFETY_BY_ORDER * (limit - own.value), degreesOfFreedom: 2, note: `Richardson's rule from the three finest runs, order ${short(order.value)}: limit ${short(limit, 6)}; ${SAFETY_BY_ORDER} times the distance to it.` };
+      return { u: SAFETY_BY_ORDER * (limit - own.value), degreesOfFreedom: 2, note: `Richardson's rule from the three finest runs, order ${numeral(order.value)}: limit ${withUnit(limit, unit, 6)}; ${SAFETY_BY_ORDER} times the distance to it.` };
     }
-    const why = order.ok ? `order ${short(order.value)} is not ${formalOrder === null ? `one of ${LOWEST_ORDER} to ${HIGHEST_ORDER}` : `the formal ${short(formalOrder)}`}` : `three runs ${order.error}`;
-    return byDifference(runs, own, why);
+    const why = order.ok ? `order ${numeral(order.value)} is not ${formalOrder === null ? `one of ${LOWEST_ORDER} to ${HIGHEST_ORDER}` : `the formal ${numeral(formalOrder)}`}` : `three runs ${order.error}`;
+    return byDifference(runs, own, unit, why);
   }
-  return byDifference(runs, own, because ?? '');
+  return byDifference(runs, own, unit, because ?? '');
 }
 
-function byDifference(runs: readonly RunNumber[], own: RunNumber, why: string): SimulationError {
+function byDifference(runs: readonly RunNumber[], own: RunNumber, unit: string, why: string): SimulationError {
   const [middle, finest] = [runs.at(-2)!, runs.at(-1)!];
   const steps = [finest.value - middle.value, finest.value - own.value];
   const larger = Math.abs(steps[0]!) >= Math.abs(steps[1]!) ? steps[0]! : steps[1]!;
-  return { u: SAFETY_BY_DIFFERENCE * larger, degreesOfFreedom: Math.min(2, runs.length - 1), note: `${SAFETY_BY_DIFFERENCE} times the difference of the two finest runs (${short(larger)}), since ${why}.` };
+  return { u: SAFETY_BY_DIFFERENCE * larger, degreesOfFreedom: Math.min(2, runs.length - 1), note: `${SAFETY_BY_DIFFERENCE} times the difference of the two finest runs (${withUnit(larger, unit)}), since ${why}.` };
 }
 
 /**
@@ -80,7 +79,7 @@ function byDifference(runs: readonly RunNumber[], own: RunNumber, why: string): 
  * Fails:  null for fewer than two radii.
  * Source: domain reference 5.1 and Q21.
  */
-export function radiusError(given: readonly RunNumber[]): SimulationError | null {
+export function radiusError(given: readonly RunNumber[], unit: string): SimulationError | null {
   const runs = distinct(given, (p, q) => p.place - q.place);
   const own = runs.find((run) => run.isOwn);
   if (runs.length < 2 || own === undefined) return null;
@@ -91,7 +90,7 @@ export function radiusError(given: readonly RunNumber[]): SimulationError | null
   const apart = atInfinity - own.value;
   const doubt = Math.abs(atInfinity - (previousOrder ?? atInfinity));
   const size = apart < 0 ? apart - doubt : apart + doubt;
-  const note = `Polynomial of degree ${degree} in 1/r over ${runs.length} radii: limit ${short(atInfinity, 6)}, ${short(apart)} away; degree ${degree - 1} differs by ${short(doubt)}; both added, half-width over √3.`;
+  const note = `Polynomial of degree ${degree} in 1/r over ${runs.length} radii: limit ${withUnit(atInfinity, unit, 6)}, ${withUnit(apart, unit)} away; degree ${degree - 1} differs by ${withUnit(doubt, unit)}; both added, half-width over √3.`;
   return { u: size / Math.sqrt(3), note };
 }
 

@@ -5,15 +5,17 @@ import type { Waveform } from '../contract/waveform';
 import { cutBefore, unitsPerM } from './cut-start';
 import { halfUnit } from './half-unit';
 import { waveformsOf } from './relatives';
+import { numeral, withUnit } from './numeral';
 import type { Rerun } from './rerun';
 import { togetherAs, type Part } from './simulation-error';
 import { smoothedInspiral } from './smooth-inspiral';
 
 const ROOT3 = Math.sqrt(3);
-const short = (x: number, digits = 2): string => String(Number(x.toPrecision(digits)));
 
 export interface Varying {
   readonly quantityId: string;
+  /** The claim's, in which the notes give what a change moves. */
+  readonly unit: string;
   readonly allowed: readonly string[];
   readonly request: MeasureRequest;
   readonly measurement: Measurement;
@@ -27,7 +29,7 @@ const usedOf = ({ measurement }: Varying, name: string): unknown => measurement.
 /** E07: start moved by ±50 M around the end of the burst, or off the first sample where no burst is declared. */
 const START_MOVED_M = 50;
 
-function startOf(waveform: Waveform, { rerun, here }: Varying): Part | string {
+function startOf(waveform: Waveform, { rerun, here, unit }: Varying): Part | string {
   const perM = unitsPerM(waveform);
   if (perM === null) return waveform.domain === 'time' ? `${waveform.name} gives no mass by which 50 M would be a time` : `${waveform.name} is a transform and has no start`;
   const first = waveform.axis[0]!;
@@ -41,7 +43,7 @@ function startOf(waveform: Waveform, { rerun, here }: Varying): Part | string {
   if (moved.length === 0) return `${waveform.name} is too short to move its start by 50 M`;
   const largest = moved.reduce((far, x) => (Math.abs(x) > Math.abs(far) ? x : far));
   const what = waveform.junkEndM === null ? `record of ${waveform.name} begun 50 M later` : `record of ${waveform.name} begun at the end of its burst, ±50 M`;
-  return { from: waveform.series ?? waveform.name, error: { u: largest / ROOT3, note: `${what}: ${moved.map((x) => short(x)).join(', ')}; half-width over √3.` } };
+  return { from: waveform.series ?? waveform.name, error: { u: largest / ROOT3, note: `${what}: ${moved.map((x, i) => (i < moved.length - 1 ? numeral(x) : withUnit(x, unit))).join(', ')}; half-width over √3.` } };
 }
 
 function startLine(varying: Varying): BudgetLine[] {
@@ -115,7 +117,7 @@ function windowLine(varying: Varying): BudgetLine[] {
 function scatterLine(varying: Varying, components: Readonly<Record<string, number | null>>): BudgetLine[] {
   const half = components.halfRange;
   if (typeof half !== 'number' || varying.measurement.budget.some(({ id }) => id === 'E16')) return [];
-  return [{ component: 'Scatter of published fits', id: 'E16', group: 'coverage', u: half / ROOT3, note: `Half of what the fits that apply span (${short(half)}), over √3.` }];
+  return [{ component: 'Scatter of published fits', id: 'E16', group: 'coverage', u: half / ROOT3, note: `Half of what the fits that apply span (${withUnit(half, varying.unit)}), over √3.` }];
 }
 
 /**

@@ -105,7 +105,7 @@ function carried({ request, leader, meter, observable, unit, title, formalOrder,
       budget: () => [
         ...propagatedLines({ scalars: read, from: limitAt, value, moves: sensitivities(limitAt, values) }, 'Carried from the runs to the limit.'),
         truncationLine(errorEstimate, safety, values.length),
-        otherRespectLine('radius', leader, finest, request.inputs.of.series ?? [], meter),
+        otherRespectLine('radius', leader, finest, request.inputs.of.series ?? [], meter, unit),
         ...chosenLines(last),
       ],
       findings: spaced,

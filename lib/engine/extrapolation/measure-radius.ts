@@ -1,3 +1,4 @@
+import { withUnit } from '../budget/numeral';
 import { houseLimitObservable, houseValues } from '../contract/house-values';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Measurement, UsedSetting } from '../contract/measurement';
@@ -38,12 +39,12 @@ const atInfinityBy = (radii: readonly number[], values: readonly number[], degre
 const weightsOf = (radii: readonly number[], degree: number): number[] => radii.map((_, i) => atInfinityBy(radii, radii.map((_r, k) => (k === i ? 1 : 0)), degree));
 
 /** E06: the limit against that of a degree less, and against perturbation theory from the largest radius. */
-function radiusLine(value: number, previous: number | null, check: number | null, degree: number): BudgetLine {
+function radiusLine(value: number, previous: number | null, check: number | null, degree: number, unit: string): BudgetLine {
   const apart = [previous, check].flatMap((other) => (other === null ? [] : [Math.abs(other - value)]));
   const base = { component: 'Extraction radius', id: 'E06', group: 'coverage' } as const;
   if (apart.length === 0) return { ...base, u: null, note: 'Not available: no lower degree and no perturbative value.' };
-  const other = check === null ? '' : `; perturbation theory from the largest radius gives ${short(check, 6)}`;
-  return { ...base, u: Math.max(...apart) / ROOT3, note: `Degree ${degree - 1} gives ${previous === null ? 'nothing' : short(previous, 6)}${other}. The larger distance as a half-width over √3.` };
+  const other = check === null ? '' : `; perturbation theory from the largest radius gives ${withUnit(check, unit, 6)}`;
+  return { ...base, u: Math.max(...apart) / ROOT3, note: `Degree ${degree - 1} gives ${previous === null ? 'nothing' : withUnit(previous, unit, 6)}${other}. The larger distance as a half-width over √3.` };
 }
 
 /** Radii that nobody said to be areal are taken for such. */
@@ -122,8 +123,8 @@ function fitted(given: Fitted): Measurement {
       components: { previousOrder, largestRadius: values.at(-1)!, checkPerturbative: check },
       budget: () => [
         ...propagatedLines({ scalars: read, from: (x) => atInfinityBy(radii, x, degree), value, moves: weightsOf(radii, degree) }, 'Carried from the radii to infinity.'),
-        otherRespectLine('resolution', runs.at(-1)!.waveform, values.at(-1)!, request.inputs.of.series ?? [], meter),
-        radiusLine(value, previousOrder, check, degree),
+        otherRespectLine('resolution', runs.at(-1)!.waveform, values.at(-1)!, request.inputs.of.series ?? [], meter, unit),
+        radiusLine(value, previousOrder, check, degree, unit),
         ...chosenLines(last),
       ],
       findings,

@@ -119,7 +119,7 @@ export const chosenLines = ({ coverage }: RunScalar): BudgetLine[] => coverage.f
  * Fails:  null where the series holds no such run.
  * Source: domain reference 5.1.
  */
-export function otherRespectLine(kind: Apart, leader: Waveform, here: number, series: readonly Waveform[], meter: Meter): BudgetLine {
+export function otherRespectLine(kind: Apart, leader: Waveform, here: number, series: readonly Waveform[], meter: Meter, unit: string): BudgetLine {
   const other: Apart = kind === 'resolution' ? 'radius' : 'resolution';
   const own = placeOf(kind, leader);
   const others = series.flatMap((waveform) => {
@@ -130,7 +130,7 @@ export function otherRespectLine(kind: Apart, leader: Waveform, here: number, se
   });
   if (own === null || others.length === 0) return unavailable(kind);
   const runs = [{ value: here, place: own, isOwn: true }, ...others];
-  const found = kind === 'resolution' ? truncationError(runs, null) : radiusError(runs);
+  const found = kind === 'resolution' ? truncationError(runs, null, unit) : radiusError(runs, unit);
   const { component, id, group } = unavailable(kind);
   return found === null ? unavailable(kind) : { component, id, group, u: Math.abs(found.u), note: found.note, ...(found.degreesOfFreedom === undefined ? {} : { degreesOfFreedom: found.degreesOfFreedom }) };
 }

@@ -85,7 +85,7 @@ function inspiralLine({ request, found, movedBy }: OwnBudget): BudgetLine {
   const joins = MOVED_JOINS.map((factor) => movedBy({ joinHz: (declared.joinHz ?? Number.NaN) * factor }));
   const moves = [...joins, movedBy({ amplitudeOrder: 1 - order })];
   const widest = Math.max(...moves.map(Math.abs));
-  const told = moves.map((x) => `${((100 * x) / found.value).toFixed(2)} %`);
+  const told = moves.map((x) => `${((100 * x) / found.value).toFixed(2).replace('-', '−')} %`);
   return {
     component: 'Post-Newtonian part',
     id: 'E11',

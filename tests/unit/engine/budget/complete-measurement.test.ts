@@ -7,6 +7,8 @@ import type { Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled, type MeasureRequest, type Quantity } from '@/lib/engine/contract/quantity';
 import type { DeclaredSettings } from '@/lib/engine/contract/settings';
 import type { Waveform } from '@/lib/engine/contract/waveform';
+import { variedLines } from '@/lib/engine/budget/varied-lines';
+import { peakLuminosity } from '@/lib/engine/quantities/peak-luminosity';
 import { radiatedEnergy } from '@/lib/engine/quantities/radiated-energy';
 import { evenTimes, gaussian, modeFrom, modeSet } from '@/tests/golden/energy-signals';
 
@@ -82,6 +84,24 @@ it('an energy from one of four radii has the way to infinity as its extraction e
   const { u } = lineOf(found, 'E06');
   expect(u! * Math.sqrt(3)).toBeGreaterThan(0.99 * way);
   expect(u! * Math.sqrt(3)).toBeLessThan(1.3 * way);
+});
+
+describe('notes of a number with a unit', () => {
+  const at = (name: string, resolution: number, part: number) => pulse(name, part, { series: 'P', resolution });
+  const [fine, coarse] = [at('P1', 1, 0), at('P2', 2, 0.1)];
+  const found = completed(fine, [coarse], {}, peakLuminosity);
+
+  it('carry it, whatever the line', () => {
+    expect(lineOf(found, 'E05').note).toMatch(/\(−\S+ c⁵\/G\)/);
+    const request: MeasureRequest = { claimId: 'C', inputs: { of: { a: fine }, noise: null }, settings: {}, over: null, claimed: [null], withFigures: false };
+    const measurement = { ...found, budget: [{ component: 'Start-up radiation', id: 'E07', group: 'coverage' as const, u: null, note: '' }], settings: [] };
+    const [start, scatter] = variedLines({ quantityId: 'recoil', unit: 'km/s', allowed: [], request, measurement, here: 140, rerun: () => 137.5 }, { halfRange: 12 });
+    expect(start!.note).toContain(': −2.5 km/s; half-width');
+    expect(scatter!.note).toContain('(12 km/s)');
+  });
+  it('carry none where the number has none', () => {
+    expect(lineOf(completed(fine, [coarse]), 'E05').note).toMatch(/\(−[\d.×⁻¹²³⁴⁵⁶⁷⁸⁹⁰]+\)/);
+  });
 });
 
 describe('a declared eccentricity', () => {
