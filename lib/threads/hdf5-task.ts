@@ -13,3 +13,7 @@ export interface Hdf5Task {
 }
 
 export type Hdf5Answer = Result<Series | ArrayStructure, Problem[]>;
+
+/** Sent once all of the program that reads is there, before anything of the file is looked at. */
+export const begins = 'begins';
+export type Hdf5Message = typeof begins | Hdf5Answer;

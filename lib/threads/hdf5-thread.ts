@@ -5,13 +5,15 @@ import { npyStructure, npzStructure } from '@/lib/formats/npy/npy-structure';
 import { hdf5Source } from '@/lib/formats/hdf5/hdf5-source';
 import { hdf5Structure } from '@/lib/formats/hdf5/hdf5-structure';
 import { faultOf } from '@/lib/formats/hdf5/hdf5-faults';
-import { capMemory, openOneFile, type RandomAccess } from '@/lib/formats/hdf5/one-file';
+import { capMemory, libraryIsHere, openOneFile, type RandomAccess } from '@/lib/formats/hdf5/one-file';
 import { err, ok } from '@/lib/kernel/result';
-import type { Hdf5Answer, Hdf5Task } from './hdf5-task';
+import { begins, type Hdf5Answer, type Hdf5Task } from './hdf5-task';
 
 /** Runs inside a thread that lives for one file and one question. */
 export async function answer(): Promise<void> {
   const task = workerData as Hdf5Task;
+  await libraryIsHere();
+  parentPort?.postMessage(begins);
   const descriptor = openSync(task.path, 'r');
   try {
     const found = await inspect(task, accessTo(descriptor));

@@ -14,7 +14,7 @@ import type { ReadHdf5 } from '@/lib/formats/hdf5/hdf5-ask';
 import { unreadable } from '@/lib/formats/open-file';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, type Result } from '@/lib/kernel/result';
-import type { Hdf5Answer, Hdf5Task } from './hdf5-task';
+import { begins, type Hdf5Answer, type Hdf5Message, type Hdf5Task } from './hdf5-task';
 
 export interface Hdf5Limits {
   readonly timeMs: number;
@@ -75,16 +75,20 @@ function runThread(task: Hdf5Task, { timeMs }: Hdf5Limits): Promise<Hdf5Answer> 
     resourceLimits: { maxOldGenerationSizeMb: 256, maxYoungGenerationSizeMb: 32 },
   });
   return new Promise<Hdf5Answer>((resolve) => {
-    let found: Hdf5Answer = err([broke(task.file)]);
+    let found: Hdf5Answer = err([neverBegan(task.file)]);
+    let begun = false;
     const limit = setTimeout(() => {
       found = err([tooSlow(task.file, timeMs)]);
       void thread.terminate();
     }, timeMs);
-    thread.once('message', (answer: Hdf5Answer) => {
-      found = answer;
-      void thread.terminate();
+    thread.on('message', (message: Hdf5Message) => {
+      begun = true;
+      found = message === begins ? err([broke(task.file)]) : message;
+      if (message !== begins) void thread.terminate();
     });
-    thread.once('error', () => undefined);
+    thread.once('error', (thrown) => {
+      if (!begun) report(thrown);
+    });
     thread.once('exit', () => {
       clearTimeout(limit);
       resolve(found);
@@ -92,5 +96,12 @@ function runThread(task: Hdf5Task, { timeMs }: Hdf5Limits): Promise<Hdf5Answer> 
   });
 }
 
+/** Whoever runs the program must hear of it: no file of anybody's is at fault. */
+function report(thrown: unknown): void {
+  const message = thrown instanceof Error ? thrown.message : String(thrown);
+  console.error(JSON.stringify({ level: 'error', at: new Date().toISOString(), where: 'hdf5 thread', message }));
+}
+
+const neverBegan = (where: string): Problem => ({ code: 'formats/reader-missing', where, saw: 'no reader: the part of the program that opens such files did not start', expected: 'a file that is read', hint: 'This is a fault of the program, not of the file. Try again later, or tell the administrator.' });
 const tooSlow = (where: string, timeMs: number): Problem => ({ code: 'formats/hdf5-time', where, saw: `a file that took longer than ${timeMs / 1000} s to read`, expected: 'a file that is read within that time', hint: 'Keep only the datasets that the claims use, in chunks of some thousand samples.' });
 const broke = (where: string): Problem => ({ code: 'formats/hdf5-damaged', where, saw: 'a file at which its reader stopped', expected: 'a whole HDF5 file', hint: 'Write the file again, for example with h5repack, and attach that.' });

@@ -16,6 +16,11 @@ export interface OneFile {
   readonly reachedFor: readonly string[];
 }
 
+/** Rejects where the library itself cannot be loaded, which is no fault of a file. */
+export async function libraryIsHere(): Promise<void> {
+  await ready;
+}
+
 const place = '/in/f.h5';
 const noSuchFile = 44;
 const readOnly = 69;

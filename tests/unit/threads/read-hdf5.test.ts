@@ -1,7 +1,7 @@
 import { existsSync, readdirSync, readFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { hdf5Limits, readHdf5, readHdf5Within, readStructure } from '@/lib/threads/read-hdf5';
 import { formatProblem } from '@/lib/kernel/problem';
 import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
@@ -64,6 +64,19 @@ describe('a hostile HDF5 file never hurts its reader', () => {
     const { problems } = await open({ file: 'h.h5', datasets: { '2,2': '/t' } }, hostile, readHdf5Within({ ...hdf5Limits, timeMs: 5 }));
     expect(problems).toEqual([expect.stringContaining('saw a file that took longer than 0.005 s to read')]);
     expect(mine()).toEqual(before);
+  });
+
+  it('a reader that is not there is a fault of the program, told as one and logged', async () => {
+    const folder = vi.spyOn(process, 'cwd').mockReturnValue('/no/such/folder');
+    const log = vi.spyOn(console, 'error').mockReturnValue(undefined);
+    try {
+      const { problems } = await open({ file: 'h.h5', datasets: { '2,2': '/t' } }, hostile, readHdf5);
+      expect(problems).toEqual(['h.h5: saw no reader: the part of the program that opens such files did not start; expected a file that is read. This is a fault of the program, not of the file. Try again later, or tell the administrator.']);
+      expect(log.mock.calls.map(([line]) => JSON.parse(String(line)) as unknown)).toEqual([expect.objectContaining({ level: 'error', where: 'hdf5 thread', message: expect.stringContaining('hdf5-thread-entry.mjs') })]);
+    } finally {
+      folder.mockRestore();
+      log.mockRestore();
+    }
   });
 
   const whole = fixture('layouts.h5');
