@@ -28,7 +28,7 @@ const cases: readonly Case[] = [
 
 describe.runIf(isThere)(
   title(
-    'energies of the reference sheets (required: published; closed forms, and arXiv:1904.04831 data integrated by an independent script)',
+    'energies of the reference sheets (required: published for run 3, closed forms; independent derivation for the data of arXiv:1904.04831, integrated by a separate numpy script)',
   ),
   () => {
     it.each(cases)('%s, %s, by both routes', (sheet, claim, settings) => {

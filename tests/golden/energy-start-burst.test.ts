@@ -12,7 +12,7 @@ const wave = modeSet(clean.t, clean.modes, 'strain', binary);
 const bursting = modeSet(noisy.t, noisy.modes, 'strain', binary);
 const valueOf = (...args: Parameters<typeof measureEnergyOf>): number => measureEnergyOf(...args).points[0]?.value ?? Number.NaN;
 
-describe('start-up radiation (required: published values of the design study, computed there by another program)', () => {
+describe('start-up radiation (required: independent derivation; the same signal and burst, computed by another program)', () => {
   it('is found where it was put, with its energy, and asks for an answer', () => {
     const { findings } = measureEnergyOf(bursting);
     const burst = findings.find(({ code }) => code === 'engine/startup-burst');

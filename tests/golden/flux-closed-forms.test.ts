@@ -90,8 +90,8 @@ describe('what is radiated', () => {
   });
 });
 
-/** The design study has these from a numpy evaluation of the same closed-form signals (domain reference, Q13–Q15, D7); it asks 2 % of a recoil. */
-describe('the demonstration signals (required: published; another program’s numbers)', () => {
+/** A separate numpy program has these from the same closed-form signals (domain reference, Q13–Q15, D7); it asks 2 % of a recoil. */
+describe('the demonstration signals (required: independent derivation; a separate numpy program)', () => {
   const wave = (massRatio: number): Waveform => {
     const { t, modes } = synthesise({ massRatio, chi1z: 0, chi2z: 0, mOmega0: 0.02, stepM: 0.4, modes: allModes });
     return modeSet(t, modes, 'strain', { massRatio, chi1z: 0, chi2z: 0 });

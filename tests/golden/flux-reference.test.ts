@@ -24,7 +24,7 @@ const cases: readonly Case[] = [
   ['simulation', 'peak-luminosity', peakLuminosity, {}],
 ];
 
-describe.runIf(isThere)(title('angular momentum, recoil and peak luminosity of the reference sheets (required: published; closed forms, symmetry, and arXiv:1904.04831 data integrated by an independent script)'), () => {
+describe.runIf(isThere)(title('angular momentum, recoil and peak luminosity of the reference sheets (required: published for run 3, closed forms and symmetry; independent derivation for the data of arXiv:1904.04831, integrated by a separate numpy script)'), () => {
   it.each(cases)('%s, %s, by both routes', (sheet, claim, quantity, settings) => {
     const expected = expectedClaim(sheet, claim);
     const [figure] = expected.points;

@@ -2,14 +2,16 @@ import { expect, it } from 'vitest';
 
 /**
  * One golden check: a value that does not come from this project. `required` says on what authority:
- * published (read in a source, or a closed form anyone can evaluate), from memory (expected form, not
- * confirmed in a source), or common practice (a rule of thumb without a source).
+ * published (read in a source, or a closed form anyone can evaluate), independent derivation (computed by
+ * another program or by hand, with no code in common; `source` says by which method, for the program is not
+ * kept here), from memory (expected form, not confirmed in a source), or common practice (a rule of thumb
+ * without a source).
  */
 export interface GoldenCheck {
   /** Short name, and the id in the reference list where it has one. */
   readonly id: string;
   readonly what: string;
-  readonly required: 'published' | 'from memory' | 'common practice';
+  readonly required: 'published' | 'independent derivation' | 'from memory' | 'common practice';
   readonly source: string;
   readonly value: number;
   /** Largest |computed/value − 1|. */

@@ -113,12 +113,12 @@ describe('stationary-phase chirps', () => {
     [0.001, 0.9980372],
     [0.002, 0.9923482],
     [0.004, 0.9722331],
-  ])('C9: a chirp mass higher by %d of itself matches by %d (required: published; closed-form phases, integral by an independent script)', (more, value) => {
+  ])('C9: a chirp mass higher by %d of itself matches by %d (required: independent derivation; closed-form phases, trapezoids, padded transform and bounded refinement in a separate script)', (more, value) => {
     const { routes } = measured(match, { a: of(tenTen), b: of(tenTen * (1 + more)) }, early, band);
     for (const route of [routes.A, routes.B]) expect(route).toAgreeWith(value, { relative: 1e-5 });
   });
 
-  it.each(shortOfThreeAndAHalf)('C8: stopped at %s, against 3.5PN, 10 + 1.4 M☉ from 30 Hz match by %d (required: from memory; phases of Buonanno et al. 2009, arXiv:0907.0700, Eq. (3.18), match by an independent script)', (_, terms, value) => {
+  it.each(shortOfThreeAndAHalf)('C8: stopped at %s, against 3.5PN, 10 + 1.4 M☉ from 30 Hz match by %d (required: from memory; phases of Buonanno et al. 2009, arXiv:0907.0700, Eq. (3.18), match an independent derivation: trapezoids, padded transform and bounded refinement in a separate script)', (_, terms, value) => {
     const mixed = (kept: number): Waveform => chirp(chirpMassS(10, 1.4), 11.4, 30, 390, 30_000, taylorPhase(10, 1.4, kept));
     const { routes } = measured(match, { a: mixed(8), b: mixed(terms) }, early, { fLowHz: 30, fHighHz: lastStableOrbitHz(11.4) });
     for (const route of [routes.A, routes.B]) expect(route).toAgreeWith(value, { relative: 2e-4 });

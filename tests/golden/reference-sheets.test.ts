@@ -4,7 +4,7 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import { runFolder } from './run-folder';
 
-/** Sheets with expected figures from closed forms and a plain numpy reading of the definitions; they lie outside the project. */
+/** Required: independent derivation — sheets with expected figures from closed forms and a plain numpy reading of the definitions; they lie outside the project. */
 const sheets = join('..', 'shared', 'reference', 'sheets');
 
 interface Expected {

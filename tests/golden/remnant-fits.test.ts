@@ -11,7 +11,7 @@ const binary = ([massRatio, chi1z, chi2z]: Parameters) => binaryOf({ massRatio, 
 /** What one fit says by either route; NaN where it does not apply. */
 const says = (name: FitName, observable: FitObservable, at: Parameters, route: 'A' | 'B' = 'A'): number => readFits(observable, binary(at), route).find((reading) => reading.name === name)?.value ?? Number.NaN;
 
-/** Check table of the design study, appendix A: evaluated there in numpy from the printed coefficients. */
+/** Check table of the domain reference, appendix A: the printed formulas and coefficients evaluated in a separate numpy script. */
 const table: readonly { readonly at: Parameters; readonly mass: readonly (number | null)[]; readonly spin: readonly (number | null)[]; readonly luminosity: readonly [number, number]; readonly recoil: number }[] = [
   { at: [1, 0, 0], mass: [0.95176, 0.95151, 0.95161, 0.95158], spin: [0.68703, 0.68671, 0.68642, 0.68637], luminosity: [1.0247, 1.021], recoil: 0 },
   { at: [1, 0.6, 0.6], mass: [null, 0.92663, 0.92656, 0.92684], spin: [null, 0.85777, 0.85816, 0.85785], luminosity: [1.4454, 1.4226], recoil: 0 },
@@ -26,7 +26,7 @@ const names: readonly FitName[] = ['pan2011', 'healy2014', 'husa2016', 'jimenez2
 /** Half a unit of the last printed digit, and a little for ties. */
 const HALF = { five: 0.51e-5, four: 0.51e-4, one: 0.051 } as const;
 
-describe.each(table)('T15 at q, χ₁, χ₂ = $at (required: published; coefficients in public source text that quotes the papers, evaluated in the design study)', ({ at, mass, spin, luminosity, recoil }) => {
+describe.each(table)('T15 at q, χ₁, χ₂ = $at (required: independent derivation; a separate numpy script evaluates the published formulas with coefficients from public source text)', ({ at, mass, spin, luminosity, recoil }) => {
   it.each(['A', 'B'] as const)('has every printed digit by route %s', (route) => {
     names.forEach((name, i) => {
       for (const [observable, expected] of [['mass', mass[i]], ['spin', spin[i]]] as const) {
@@ -42,7 +42,7 @@ describe.each(table)('T15 at q, χ₁, χ₂ = $at (required: published; coeffic
 });
 
 describe('the fits elsewhere', () => {
-  it('give 169.2 km/s with the labels of the last spinning entry exchanged, and an estimate of 0.663 that is 3 % low (required: published; the design study)', () => {
+  it('give 169.2 km/s with the labels of the last spinning entry exchanged, and an estimate of 0.663 that is 3 % low (required: independent derivation; the published formulas in a separate numpy script)', () => {
     for (const route of ['A', 'B'] as const) {
       expect(says('campanelli2007', 'recoil', [3, 0.2, 0.5], route)).toAgreeWith(169.2, HALF.one);
       expect(says('buonanno2008', 'spin', [1, 0, 0], route)).toAgreeWith(0.663, 5e-4);

@@ -18,7 +18,7 @@ interface Sheet {
 const json = (name: string): unknown => JSON.parse(readFileSync(join(sheet, name), 'utf8'));
 const ids = ['remnant-mass', 'remnant-spin', 'cycles'] as const;
 
-describe.runIf(isThere)(title('the remnant of an open simulation (required: published; metadata of SXS:BBH:1155, arXiv:1904.04831; cycles by an independent script)'), () => {
+describe.runIf(isThere)(title('the remnant of an open simulation (required: published, metadata of SXS:BBH:1155, arXiv:1904.04831; independent derivation of cycles and eccentricity, numpy with cubic splines)'), () => {
   const folder = isThere ? mkdtempSync(join(tmpdir(), 'remnant-')) : '';
   let claims: ReadonlyMap<string, ResultClaim> = new Map();
   const expected = isThere ? (json('expected.json') as { claims: Record<string, { points: readonly { value: number; tolerance: number }[] }> }).claims : {};

@@ -5,8 +5,8 @@ import { radiusExtrapolation } from '@/lib/engine/quantities/radius-extrapolatio
 import { goldenChecks } from './golden-check';
 import { atRadius, measureSeries, mixedRuns, runOf, seriesBy } from './run-signals';
 
-/** Closed forms of the signal, and an independent numpy script over it (fine grids, sixth-order differences, Simpson's rule, bisection). */
-const script = 'independent numpy script over the closed-form signal';
+/** The signal is a closed form; what has none of its own is computed from it by a separate program that shares no code with the engine. */
+const script = "numpy script over the closed-form signal: fine grid, sixth-order differences, Simpson's rule, bisection";
 const routes = ['A', 'B'] as const;
 const mixed = mixedRuns();
 const powers = [80, 96, 112].map((n) => runOf({ phaseRad: 0, amplitude: 0.02 * (80 / n) ** 3 }, { name: `p${n}`, resolution: 1 / n }));
@@ -19,9 +19,9 @@ describe('the order of a series', () => {
     goldenChecks([
       { id: `D6 ${route}`, what: 'of a phase of orders 4 and 1.2 is neither', required: 'published', source: 'closed form: ratio 1.8992 of 0.28929 and 0.15232 rad', value: 2.7971166184658367, relative: 1e-8, compute: () => seriesBy(route, convergenceOrder, mixed) },
       { id: `amplitude ${route}`, what: 'of an amplitude of third order', required: 'published', source: 'closed form', value: 3, relative: 1e-8, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'amplitude' }) },
-      { id: `complex ${route}`, what: 'of both together, to where the finest falls below a tenth of its peak', required: 'published', source: script, value: 2.7873850575103916, relative: 1e-8, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'complex' }) },
-      { id: `window ${route}`, what: 'of both together from 100 to 500 M', required: 'published', source: script, value: 2.7919754188663806, relative: 1e-10, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'complex', window: [100, 500] }) },
-      { id: `energy ${route}`, what: 'of the radiated energy', required: 'published', source: script, value: 2.916237904772366, relative: 1e-6, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'radiated-energy' }) },
+      { id: `complex ${route}`, what: 'of both together, to where the finest falls below a tenth of its peak', required: 'independent derivation', source: script, value: 2.7873850575103916, relative: 1e-8, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'complex' }) },
+      { id: `window ${route}`, what: 'of both together from 100 to 500 M', required: 'independent derivation', source: script, value: 2.7919754188663806, relative: 1e-10, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'complex', window: [100, 500] }) },
+      { id: `energy ${route}`, what: 'of the radiated energy', required: 'independent derivation', source: script, value: 2.916237904772366, relative: 1e-6, compute: () => seriesBy(route, convergenceOrder, mixed, { observable: 'radiated-energy' }) },
     ]);
 
   it('stands beside those of each curve, the pointwise one and the two differences', () => {
@@ -39,9 +39,9 @@ describe('the limit at zero spacing', () => {
   for (const route of routes)
     goldenChecks([
       { id: `T5 ${route}`, what: 'of an amplitude with one power of the spacing is the amplitude without', required: 'published', source: 'closed form (T5 of the design reference)', value: 0.3270350226016691, relative: 1e-9, compute: () => seriesBy(route, extrapolatedValue, powers, { observable: 'amplitude-at-peak' }) },
-      { id: `phase ${route}`, what: 'of the phase at the peak by the measured order', required: 'published', source: script, value: 67.23442316568632, relative: 1e-9, compute: () => seriesBy(route, extrapolatedValue, mixed, { observable: 'phase-at-peak' }) },
-      { id: `formal ${route}`, what: 'of the phase at the peak by order 4', required: 'published', source: script, value: 67.33812830662195, relative: 1e-9, compute: () => seriesBy(route, extrapolatedValue, mixed, { observable: 'phase-at-peak', formalOrder: 4 }) },
-      { id: `energy ${route}`, what: 'of the radiated energy', required: 'published', source: script, value: 0.02400954350817639, relative: 1e-8, compute: () => seriesBy(route, extrapolatedValue, mixed) },
+      { id: `phase ${route}`, what: 'of the phase at the peak by the measured order', required: 'independent derivation', source: script, value: 67.23442316568632, relative: 1e-9, compute: () => seriesBy(route, extrapolatedValue, mixed, { observable: 'phase-at-peak' }) },
+      { id: `formal ${route}`, what: 'of the phase at the peak by order 4', required: 'independent derivation', source: script, value: 67.33812830662195, relative: 1e-9, compute: () => seriesBy(route, extrapolatedValue, mixed, { observable: 'phase-at-peak', formalOrder: 4 }) },
+      { id: `energy ${route}`, what: 'of the radiated energy', required: 'independent derivation', source: script, value: 0.02400954350817639, relative: 1e-8, compute: () => seriesBy(route, extrapolatedValue, mixed) },
     ]);
 
   it('comes with order, finest value and an error of 1.25 times the distance, or three where another order was declared', () => {
@@ -58,9 +58,9 @@ describe('the limit at zero spacing', () => {
 describe('the limit at infinite radius', () => {
   for (const route of routes)
     goldenChecks([
-      { id: `degree 1 ${route}`, what: 'of the energy by a straight line, isotropic radii', required: 'published', source: script, value: 0.023944017378277185, relative: 1e-10, compute: () => seriesBy(route, radiusExtrapolation, isotropic, { extrapolationOrder: 1 }) },
-      { id: `degree 2 ${route}`, what: 'of the energy, isotropic radii', required: 'published', source: script, value: 0.02398439344160535, relative: 1e-10, compute: () => seriesBy(route, radiusExtrapolation, isotropic) },
-      { id: `degree 3 ${route}`, what: 'of the energy by a cubic, isotropic radii', required: 'published', source: script, value: 0.02398487678358404, relative: 1e-10, compute: () => seriesBy(route, radiusExtrapolation, isotropic, { extrapolationOrder: 3 }) },
+      { id: `degree 1 ${route}`, what: 'of the energy by a straight line, isotropic radii', required: 'independent derivation', source: script, value: 0.023944017378277185, relative: 1e-10, compute: () => seriesBy(route, radiusExtrapolation, isotropic, { extrapolationOrder: 1 }) },
+      { id: `degree 2 ${route}`, what: 'of the energy, isotropic radii', required: 'independent derivation', source: script, value: 0.02398439344160535, relative: 1e-10, compute: () => seriesBy(route, radiusExtrapolation, isotropic) },
+      { id: `degree 3 ${route}`, what: 'of the energy by a cubic, isotropic radii', required: 'independent derivation', source: script, value: 0.02398487678358404, relative: 1e-10, compute: () => seriesBy(route, radiusExtrapolation, isotropic, { extrapolationOrder: 3 }) },
       { id: `amplitude ${route}`, what: 'of an amplitude that is a quadratic in 1/r is the one without radius', required: 'published', source: 'closed form', value: 0.3270350226016691, relative: 1e-9, compute: () => seriesBy(route, radiusExtrapolation, isotropic, { observable: 'amplitude-at-peak' }) },
     ]);
 

@@ -4,8 +4,8 @@ import type { ResultClaim } from '@/lib/pipeline/result';
 import { runFolder } from './run-folder';
 
 /**
- * The specimens' numbers, required: published — the design reference (domain.md section 7) has them from a numpy evaluation
- * of the same closed-form signals, which shares neither code nor method with either route. Agreement asked for there:
+ * The specimens' numbers, required: independent derivation — a numpy evaluation of the same closed-form signals, which shares
+ * neither code nor method with either route (domain reference, section 7). Agreement asked for there:
  * match 1e-3, loudness 0.3 %, energy 0.5 %.
  */
 let claims: ReadonlyMap<string, ResultClaim>;
@@ -58,7 +58,7 @@ describe('four per cent of the mass radiated', () => {
   });
 });
 
-/** Required: an independent numpy script (cubic splines, trapezoids) over the same file; the design study has 140 km/s for an earlier start. */
+/** Required: independent derivation — a numpy script (cubic splines, trapezoids) over the same file; another has 140 km/s for an earlier start. */
 describe('what a merger of mass ratio 2 carries away', () => {
   beforeAll(async () => void (claims = await runFolder(folder('two-to-one'))), 120_000);
   it('recomputes 0.26074, 8.4346e-4 and 137.64 km/s towards −151°, and agrees', () => {
@@ -71,8 +71,8 @@ describe('what a merger of mass ratio 2 carries away', () => {
 });
 
 /**
- * Required: the drift of the coarser run is 0.05 rad and 0.002 by construction; lines and alignment by an independent
- * numpy script (cubic splines, exact edges, Gauss sums) over the same files; the tone itself from the quasi-normal table.
+ * Required: the drift of the coarser run is 0.05 rad and 0.002 by construction; lines and alignment by independent derivation,
+ * a numpy script (cubic splines, exact edges, Gauss sums) over the same files; the tone itself from the quasi-normal table.
  */
 describe('how the remnant rings, and what a coarser run changes', () => {
   beforeAll(async () => void (claims = await runFolder(folder('ringdown-and-resolution'))), 120_000);
@@ -95,8 +95,8 @@ describe('how the remnant rings, and what a coarser run changes', () => {
 });
 
 /**
- * Required: the design study (domain.md Q24, Q25 and D9: 10⁻¹⁵, 1.8×10⁴⁷ erg, 10⁻¹¹, exponent 2.00, 1.8×10⁻⁴ Hz against 1.6 kHz, 11.5 M☉), and an
- * independent numpy script (quintic splines, fine trapezoids, padded transforms) over the same files.
+ * Required: independent derivation — closed forms (domain reference, Q24, Q25 and D9: 10⁻¹⁵, 1.8×10⁴⁷ erg, 10⁻¹¹, exponent 2.00, 1.8×10⁻⁴ Hz against
+ * 1.6 kHz, 11.5 M☉), and a numpy script (quintic splines, fine trapezoids, padded transforms) over the same files.
  */
 describe('an electromagnetic twin', () => {
   beforeAll(async () => void (claims = await runFolder(folder('electromagnetic-twin'))), 120_000);
@@ -158,8 +158,8 @@ describe('a phase that does not converge as claimed', () => {
 });
 
 /**
- * Required: published — order 4 and the terms in 1/r are how the signal was made (design reference, section 7); the energies from an
- * independent numpy script over the same files (twelfth-order differences, Simpson's rule, least squares).
+ * Required: order 4 and the terms in 1/r are how the signal was made (domain reference, section 7); the energies by independent
+ * derivation, a numpy script over the same files (twelfth-order differences, Simpson's rule, least squares).
  */
 describe('a remnant known at three resolutions and four radii', () => {
   beforeAll(async () => void (claims = await runFolder(folder('remnant-by-balance'))), 240_000);
@@ -174,7 +174,7 @@ describe('a remnant known at three resolutions and four radii', () => {
   });
 });
 
-/** Required: an independent numpy script (cubic splines, five-sample parabola, Chebyshev fit) over the same file; the swing by construction; fits from appendix A of the design study. */
+/** Required: independent derivation — a numpy script (cubic splines, five-sample parabola, Chebyshev fit) over the same file; the swing by construction; fits by the script behind the check table (remnant-fits.test.ts). */
 describe('a nearly circular inspiral and what it should leave', () => {
   beforeAll(async () => void (claims = await runFolder(folder('nearly-circular'))), 120_000);
   it('recomputes an eccentricity of 0.00472, of the 0.005 put in, and 18.11 cycles', () => {
@@ -194,7 +194,7 @@ describe('a nearly circular inspiral and what it should leave', () => {
 });
 
 /**
- * Required: an independent numpy script over the same files (septic splines in time, transforms of 2^15, scipy's not-a-knot spline);
+ * Required: independent derivation — a numpy script over the same files (septic splines in time, transforms of 2^15, scipy's not-a-knot spline);
  * the design reference has 65.5 %, 41.3 % and 99.1 % for other records of the same family, see the decision on fitting factors.
  */
 describe('what a spin-blind search sees', () => {
@@ -217,7 +217,7 @@ describe('what a spin-blind search sees', () => {
   });
 });
 
-/** Required: published — the design reference has 42.7 from these signals, and 1.142 from a record that begins earlier; 1.14341 is what an independent scipy script finds in this file. */
+/** Required: independent derivation — a numpy evaluation has 42.7 from these signals, and 1.142 from a record that begins earlier; 1.14341 is what a separate scipy script finds in this file (its method was not written down). */
 describe('a long signal from a short record', () => {
   beforeAll(async () => void (claims = await runFolder(folder('long-signal'))), 300_000);
   it('recomputes 42.7 with the restricted amplitude, and the horizon of this record, 0.001 beyond that of a longer one', () => {
@@ -228,7 +228,7 @@ describe('a long signal from a short record', () => {
   });
 });
 
-/** Required: published — the design reference has 0.9924 and 0.9726 for a longer record; the last digits by an independent numpy script over the same files. */
+/** Required: independent derivation — a numpy evaluation has 0.9924 and 0.9726 for a longer record; the last digits by a numpy script over the same files (padded transforms, scipy's minimisation over angles). */
 describe('one binary from all sides', () => {
   beforeAll(async () => void (claims = await runFolder(folder('all-sides'))), 300_000);
   it('recomputes 0.9927 and 0.9734 for the quadrupole alone, and agrees', () => {

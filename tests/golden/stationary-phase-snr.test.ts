@@ -59,8 +59,8 @@ const massChecks = (route: DetectorRoute): GoldenCheck[] =>
   ).map(([mass, value]) => ({
     id: 'B12',
     what: `loudness of equal masses of ${mass} M☉ in all at 1 Gpc, curve A2, 20 Hz to the last stable orbit`,
-    required: 'published' as const,
-    source: 'f^(−7/3) moment by mpmath quadrature; curve A2',
+    required: 'independent derivation' as const,
+    source: 'f^(−7/3) moment over curve A2 by adaptive quadrature in mpmath, a separate script',
     value,
     relative: 1e-6,
     // The curve is not known below 20 Hz, and the integral starts there: its closed form is read directly.

@@ -51,6 +51,26 @@ describe('a count of cycles', () => {
     expect(numberBy(cycles, 'A', modeSet(axis, [tone(2, 2, 0.2, 0.1), tone(3, 3, 0.3, 0.5)]), { window })).toAgreeWith((0.2 * 190) / (2 * Math.PI), 1e-9);
     expect(numberBy(cycles, 'A', modeSet(axis, [tone(2, 1, 0.1, 0.1), tone(3, 3, 0.3, 0.5)]), { window })).toAgreeWith((0.3 * 190) / (2 * Math.PI), 1e-9);
   });
+  it.each([cycles, eccentricity])('$id follows the first mode that is listed, and leaves out what lies above lMax', (quantity) => {
+    const axis = evenTimes(0, 300, 0.5);
+    const tone = (l: number, m: number, omega: number, size: number) => modeFrom(axis, l, m, (t) => [size * Math.cos(omega * t), -size * Math.sin(omega * t)]);
+    const wave = modeSet(axis, [tone(2, 1, 0.1, 0.1), tone(3, 3, 0.3, 0.5), tone(4, 4, 0.4, 0.7)]);
+    const read = (settings: object) => {
+      const { points, findings } = measureOf(quantity, wave, { window: [10, 200], ...settings });
+      const [point] = points;
+      return point!.value === null ? findings[0]!.code : quantity === cycles ? (point!.value * 2 * Math.PI) / 190 : 2 * point!.components!.referenceFrequency!;
+    };
+    expect(read({ modes: [[3, 3], [2, 1]] })).toAgreeWith(0.3, 1e-9);
+    expect(read({})).toAgreeWith(0.4, 1e-9);
+    expect(read({ modes: 'all', lMax: 3 })).toAgreeWith(0.3, 1e-9);
+    expect(read({ lMax: 2 })).toAgreeWith(0.1, 1e-9);
+    expect(read({ modes: [[2, 2]] })).toBe('engine/modes-missing');
+    expect(read({ modes: [[3, 3]], lMax: 2 })).toBe('engine/modes-missing');
+    expect(quantity.sweepable).toEqual(['startM', 'lMax', 'integrationFloor']);
+    expect(measureOf(quantity, wave, { window: [10, 200] }, { setting: 'lMax', values: [2, 3] }).points).toHaveLength(2);
+    expect(measureOf(quantity, wave, { window: [10, 200] }).assumed).toEqual(['modes']);
+    expect(measureOf(quantity, { ...modeSet(axis, [tone(3, 3, 0.3, 0.5)]), negativeM: null }, { window: [10, 200], modes: [[3, -3]] }).assumed).toEqual(['negativeM']);
+  });
   it('reads plus and cross along a line of sight, and refuses one alone', () => {
     const axis = evenTimes(0, 300, 0.5);
     const [plus, cross] = [axis.map((t) => Math.cos(0.2 * t)), axis.map((t) => Math.sin(0.2 * t))];
@@ -70,7 +90,7 @@ describe('a count of cycles', () => {
   });
 });
 
-/** Required: an independent numpy script (cubic splines on a dense grid, trapezoid, Chebyshev fit) over the same closed form. */
+/** Required: independent derivation — a numpy script (cubic splines on a dense grid, trapezoid, Chebyshev fit) over the same closed form. */
 describe('an eccentricity', () => {
   it.each([
     [950, 0.002969501774898862],

@@ -62,7 +62,7 @@ const merger = (facts: BinaryFacts = binary, massRatio = 1, stepM = 0.4) => {
   return modeSet(t, modes, 'strain', facts);
 };
 
-/** Required: published — the design study has 0.9516 to 0.9520 and 0.9614, 0.625; more digits by an independent numpy script (cubic splines, trapezoids). */
+/** Required: independent derivation — 0.9516 to 0.9520 and 0.9614, 0.625 in the domain reference; more digits by a separate numpy script (cubic splines, trapezoids). */
 describe('a balance from a post-Newtonian start', () => {
   const cases = [
     [1, 0.95155093, 0.695741967],
