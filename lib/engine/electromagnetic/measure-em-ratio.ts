@@ -5,7 +5,7 @@ import { burstFindings, samplingFindings } from '../radiation/radiation-findings
 import { energyOnSamples } from '../radiation/energy-on-samples';
 import { energyRecipe } from '../radiation/energy-recipe';
 import { isFinding, measureTones, type ToneRecipe } from '../tones/measure-tones';
-import { floorRows, usedSettings } from '../tones/used-rows';
+import { floorRows, mirrorRows, usedSettings } from '../tones/used-rows';
 import { carried, emComputation, emCoverage } from './em-budget';
 import { bothFluxesFigure } from './em-figures';
 import { sourceFindings, testFieldFindings } from './em-findings';
@@ -49,7 +49,7 @@ function recipeOf(request: MeasureRequest, points: readonly (RatioPoint | Findin
     computation: (point) => linesOf(point, 'computation'),
     coverage: (point) => linesOf(point, 'coverage'),
     findings: ({ em, gw }) => [...sourceFindings(em), ...gwFindings(gw, request.settings.startM !== undefined), ...testFieldFindings(judged)],
-    settings: ({ em, gw }) => usedSettings([...emRows(em), ...floorRows(gw.point.settings.floor, gw.point.settings.startM, request).filter(({ name }) => name !== 'startM')], request),
+    settings: ({ em, gw }) => usedSettings([...emRows(em), ...floorRows(gw.point.settings.floor, gw.point.settings.startM, request).filter(({ name }) => name !== 'startM'), ...mirrorRows(gw.completed, gw.point.record.modes)], request),
     figures: ({ em, gw }) => [bothFluxesFigure(em, gw.store.fine(gw.point.record, gw.point.settings), [em.source.waveform.name, gw.completed.waveform.name])],
     tolerance,
   };

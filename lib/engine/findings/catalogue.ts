@@ -102,7 +102,7 @@ const numbered: readonly CatalogueRow[] = [
     advice: 'Cut the record there, or declare a window that ends earlier.',
   },
   {
-    code: 'engine/modes-missing', numbers: ['V13'], part: 'modes', levels: [{ level: 'stops-lodging', when: 'a recoil without (2,±2), (2,±1), (3,±3) and without negativeM: none; a mode that is followed alone' }, { level: 'worth-a-look' }], concerns: 'all on modes',
+    code: 'engine/modes-missing', numbers: ['V13'], part: 'modes', levels: [{ level: 'stops-lodging', when: 'a recoil from a file without (2,±2), (2,±1), (3,±3) and without negativeM: none; a mode that is followed alone' }, { level: 'worth-a-look' }], concerns: 'all on modes',
     rule: 'A mode that the claim lists, or that carries the quantity, is not in the file.',
     advice: 'Supply the mode, or list the modes that are meant.',
   },

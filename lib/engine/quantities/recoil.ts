@@ -7,7 +7,7 @@ import { recoilRecipe } from '../radiation/recoil-recipe';
  * Shape:  one number a point, the length of v; components `vx`, `vy`, `vz`, `inPlane` and `directionDeg` in the file's axes.
  * Units:  km/s, degrees.
  * Error:  U from route A's own knobs and the digits of the input, as the length of a vector.
- * Fails:  findings that stop (neighbouring modes missing, no signal, a start outside the record, a normaliser that is not known).
+ * Fails:  findings that stop (neighbouring modes missing from the file, no signal, a start outside the record, a normaliser that is not known).
  * Source: Ruiz et al. 2008, arXiv:0707.4654; settings.md section 5.
  */
 export const recoil: Quantity = {

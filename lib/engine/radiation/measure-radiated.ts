@@ -122,7 +122,7 @@ function measurePoints(task: Task): Measurement {
     points: points.map((each, i) => ({ ...measuredPoint(recipe, each, byA[i]!, byB.get(i) ?? null), ...ownFloor(request, points, each) })),
     budget: radiationBudget({ recipe, point, store, digits }, outcome),
     findings,
-    ...settingsUsed(point.settings, request, completed.waveform, point.record, recipe.settings, recipe.rows?.(point)),
+    ...settingsUsed(point.settings, request, completed, point.record, recipe.settings, recipe.rows?.(point)),
     routeBPoints,
     figures: request.withFigures ? recipe.figures(point, store, name) : [],
   };

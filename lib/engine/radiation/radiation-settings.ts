@@ -1,3 +1,4 @@
+import type { CompletedModes } from '../conditioning/complete-modes';
 import { houseValues } from '../contract/house-values';
 import type { UsedSetting } from '../contract/measurement';
 import type { MeasureRequest } from '../contract/quantity';
@@ -8,6 +9,7 @@ import type { BeforeRule } from './energy-before';
 import { defaultFloor } from './integration-floor';
 import { divisionsTo, type RadiationRecord } from './radiation-record';
 import type { RadiationRecipe } from './radiation-recipe';
+import { mirrorRows, usedSettings, type UsedRow } from '../tones/used-rows';
 
 /** Everything a point of a claim of this family rests on, defaults filled in. */
 export interface RadiationSettings {
@@ -49,19 +51,11 @@ export function radiationSettings(declared: DeclaredSettings, waveform: Waveform
   };
 }
 
-interface Row {
-  readonly name: SettingName;
-  readonly value: unknown;
-  readonly unit?: string;
-  /** Could another choice of this setting change the value of this claim? */
-  readonly matters: boolean;
-}
-
-function rowsOf(used: RadiationSettings, waveform: Waveform, record: RadiationRecord): Row[] {
+function rowsOf(used: RadiationSettings, waveform: Waveform, record: RadiationRecord): UsedRow[] {
   // Without a stated remnant its mass is what is left of M, which differs from M as well.
   const knowsOtherMass = used.normaliseBy === 'remnant' || waveform.binary.admEnergy !== undefined || waveform.binary.remnantMass !== undefined;
   const evolves = used.rule === 'removed';
-  const rows: Row[] = [
+  const rows: UsedRow[] = [
     { name: 'modes', value: used.modes, matters: record.modes.length > 1 },
     { name: 'startM', value: used.startM, unit: 'M', matters: waveform.junkEndM === null },
     { name: 'includeEnergyBeforeStart', value: used.rule, matters: true },
@@ -86,10 +80,7 @@ function rowsOf(used: RadiationSettings, waveform: Waveform, record: RadiationRe
  * Fails:  never.
  * Source: settings.md section 1 (the mark ●).
  */
-export function settingsUsed(used: RadiationSettings, request: MeasureRequest, waveform: Waveform, record: RadiationRecord, allowed: readonly SettingName[], more: readonly Row[] = []): { settings: UsedSetting[]; assumed: string[] } {
-  const rows = [...rowsOf(used, waveform, record).filter(({ name }) => allowed.includes(name)), ...more];
-  const { settings: declared, over } = request;
-  const standing = (name: SettingName): UsedSetting['standing'] => (name === over?.setting ? 'swept' : declared[name] === undefined ? 'assumed' : 'declared');
-  const settings = rows.map(({ name, value, unit }): UsedSetting => ({ name, value, standing: standing(name), ...(unit === undefined ? {} : { unit }) }));
-  return { settings, assumed: rows.filter(({ name, matters }) => matters && standing(name) === 'assumed').map(({ name }) => name) };
+export function settingsUsed(used: RadiationSettings, request: MeasureRequest, { waveform, mirrorAssumed }: CompletedModes, record: RadiationRecord, allowed: readonly SettingName[], more: readonly UsedRow[] = []): { readonly settings: UsedSetting[]; readonly assumed: string[] } {
+  const rows = rowsOf(used, waveform, record).filter(({ name }) => (allowed as readonly string[]).includes(name));
+  return usedSettings([...rows, ...more, ...mirrorRows({ mirrorAssumed }, record.modes)], request);
 }

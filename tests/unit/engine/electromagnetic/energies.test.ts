@@ -23,7 +23,8 @@ describe('an electromagnetic energy', () => {
     expect(erg).toAgreeWith(measured.points[0]!.value! * 1e8 * 1.78707e54, { relative: 1e-4 });
     expect(peakErgPerS).toBeGreaterThan(erg! / (420 * 1e8 * 4.9255e-6));
     expect(codesOf(measured)).toEqual([]);
-    expect(measured.assumed).toEqual(['startM']);
+    expect(measured.assumed).toEqual(['startM', 'tetrad']);
+    expect(measureOfRoles(emEnergy, { a: { ...weak, tetrad: 'symmetric' } }).assumed).toEqual(['startM']);
   });
   it('goes to another field and mass with B̂², and takes from the file what the claim leaves out', () => {
     const value = measureOfRoles(emEnergy, { a: weak }).points[0]!.value!;
@@ -95,6 +96,8 @@ describe('electromagnetic over gravitational energy', () => {
     const waves = measureOfRoles(radiatedEnergy, { a: gw }).points[0]!.value!;
     const measured = measureOfRoles(emRatio, { em: weak, gw });
     for (const value of bothRoutes(measured)) expect(value).toAgreeWith((0.56 * hat * hat) / waves, { relative: 1e-6 });
+    expect(measured.assumed).not.toContain('negativeM');
+    expect(measureOfRoles(emRatio, { em: weak, gw: { ...gw, negativeM: null } }).assumed).toEqual(expect.arrayContaining(['tetrad', 'negativeM']));
     expect(measured.points[0]!.components).toMatchObject({ gwEnergy: waves, fieldHat: hat });
     expect(measureOfRoles(emRatio, { em: weak, gw }, { fieldGauss: 1e5, totalMassMsun: 1e8 }).points[0]!.value).toAgreeWith((56 * hat * hat) / waves, { relative: 1e-6 });
     expect(measured.budget.filter(({ group }) => group === 'computation').map(({ id }) => id)).toEqual(['E01', 'rounding', 'E01', 'E02', 'rounding']);

@@ -81,6 +81,11 @@ describe.each(all.map((quantity) => [quantity.id, quantity] as const))('%s', (_,
   it('asks when partners with m < 0 were made up', () => {
     expect(codes(quantity, { ...wave, negativeM: null })).toEqual(['engine/negative-m-assumed needs-answer']);
     expect(codes(quantity, wave)).toEqual([]);
+    expect(measureOf(quantity, { ...wave, negativeM: null }).assumed).toContain('negativeM');
+    expect(measureOf(quantity, { ...wave, negativeM: null }).settings).toContainEqual({ name: 'negativeM', value: 'mirror', standing: 'assumed' });
+    expect(measureOf(quantity, wave).assumed).not.toContain('negativeM');
+    // Where none of those made up is used, the rule decides nothing.
+    expect(measureOf(quantity, { ...wave, negativeM: null }, { modes: [[2, 2], [2, 1]] }).assumed).not.toContain('negativeM');
   });
 
   it('is swept over its start and its highest ℓ', () => {
@@ -177,12 +182,22 @@ describe('recoil', () => {
     expect(m.points[0]!.value).toBeNull();
   });
 
-  it('takes modes that stand alone by declaration, but not when no two are neighbours', () => {
+  it('takes modes that stand alone by declaration, and looks where no two are neighbours', () => {
     expect(codes(recoil, { ...only(mode(2, 2, 0.12), mode(3, 3, 0.03)), negativeM: 'none' })).toEqual(['engine/modes-missing worth-a-look']);
     const lone = measureOf(recoil, { ...only(mode(2, 2, 0.12)), negativeM: 'none' });
-    expect(lone.points[0]!.value).toBeNull();
-    expect(lone.findings.at(-1)!.text).toContain('no two are neighbours');
-    expect(measureOf(recoil, wave, { modes: [[2, 2], [2, -2]] }).points[0]!.value).toBeNull();
+    const energy = numberBy(radiatedEnergy, 'A', { ...only(mode(2, 2, 0.12)), negativeM: 'none' });
+    // A lone mode pushes along z by c(ℓ,m) = 2m/(ℓ(ℓ+1)) of its energy: 2/3 for (2,2).
+    for (const route of ['A', 'B'] as const) expect(lone.points[0]!.routes[route]!).toAgreeWith(((2 / 3) * energy * C_KM_PER_S) / (1 - energy), { relative: 1e-8 });
+    expect(lone.findings.map(({ level }) => level)).toEqual(['worth-a-look', 'worth-a-look']);
+    expect(lone.findings[0]!.text).toContain('no two are neighbours');
+  });
+
+  it('is zero, with a look, for (2,±2) listed alone out of a whole file', () => {
+    const { points, findings } = measureOf(recoil, wave, { modes: [[2, 2], [2, -2]] });
+    expect(points[0]!.value).toAgreeWith(0, 1e-9);
+    expect(points[0]!.components!.directionDeg).toBeNull();
+    expect(points[0]!.routes.B!).toAgreeWith(0, 1e-9);
+    expect(findings.map(({ code, level }) => `${code} ${level}`)).toEqual(['engine/modes-missing worth-a-look']);
   });
 
   it('keeps its natural tolerance at 5 km/s for slow remnants', () => {
