@@ -5,9 +5,9 @@ import { polarOf } from '../series/polar';
 import { isFinding, measureTones, stop, type At, type ToneRecipe } from '../tones/measure-tones';
 import { toneSampling } from '../tones/tone-findings';
 import { stretchOf, toneName } from '../tones/tone';
-import { floorRows, usedSettings } from '../tones/used-rows';
+import { usedSettings } from '../tones/used-rows';
 import { floorLine, integrationLine, madeUp } from './orbit-budget';
-import { orbitPreparer, stretchByRouteA, stretchByRouteB, type OrbitPoint, type Stretch } from './orbit-point';
+import { orbitPreparer, orbitRows, stretchByRouteA, stretchByRouteB, type OrbitPoint, type Stretch } from './orbit-point';
 import { advanceOnPanels, advanceOnSamples } from './phase-advance';
 
 const ROOT3 = Math.sqrt(3);
@@ -76,14 +76,11 @@ const recipeOf = (request: MeasureRequest): ToneRecipe<OrbitPoint> => ({
   findings: (point) => [...madeUp(point), ...toneSampling(point.tones.B, point.waveform.name)],
   settings: (point) => {
     const stretch = found(point);
-    return usedSettings([{ name: 'window', value: [stretch.from, stretch.to], unit: 'M', matters: true }, ...startRow(point), ...floorRows(point.tones.floor, point.startM, request).filter(({ name }) => name !== 'startM')], request);
+    return usedSettings(orbitRows(point, stretch, request), request);
   },
   figures: (point) => [figureOf(point)],
   tolerance: () => houseCycles,
 });
-
-/** Where the window is the default one, the start is read from it. */
-export const startRow = (point: OrbitPoint) => (point.declaredWindow === null ? [{ name: 'startM', value: point.startM, unit: 'M', matters: false } as const] : []);
 
 const houseCycles = 0.05;
 

@@ -5,10 +5,9 @@ import { relativeSlip } from '../radiation/input-rounding';
 import { isFinding, measureTones, stop, type At, type ToneRecipe } from '../tones/measure-tones';
 import { short, toneSampling } from '../tones/tone-findings';
 import { toneName } from '../tones/tone';
-import { floorRows, usedSettings } from '../tones/used-rows';
-import { startRow } from './measure-cycles';
+import { usedSettings } from '../tones/used-rows';
 import { floorLine, integrationLine, madeUp } from './orbit-budget';
-import { orbitPreparer, stretchByRouteA, stretchByRouteB, type OrbitPoint, type Stretch } from './orbit-point';
+import { orbitPreparer, orbitRows, stretchByRouteA, stretchByRouteB, type OrbitPoint, type Stretch } from './orbit-point';
 import { advanceOnSamples } from './phase-advance';
 import { eccentricityOf, houseRule, smoothedOnPanels, smoothedOnSamples } from './smooth-frequency';
 
@@ -120,7 +119,7 @@ const recipeOf = (request: MeasureRequest): ToneRecipe<OrbitPoint> => ({
   findings: (point) => [...madeUp(point), ...toneSampling(point.tones.B, point.waveform.name), ...fewOrbits(point)],
   settings: (point) => {
     const stretch = found(point);
-    return usedSettings([{ name: 'window', value: [stretch.from, stretch.to], unit: 'M', matters: true }, ...startRow(point), ...floorRows(point.tones.floor, point.startM, request).filter(({ name }) => name !== 'startM')], request);
+    return usedSettings(orbitRows(point, stretch, request), request);
   },
   figures: (point) => [figureOf(point)],
   tolerance: eccentricityTolerance,

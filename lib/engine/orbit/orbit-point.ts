@@ -4,16 +4,19 @@
  * differences at the samples, route B splines of the real and imaginary part and Gauss panels.
  */
 import { asModes } from '../alignment/pair-point';
+import { completeModes } from '../conditioning/complete-modes';
 import { dominantMode } from '../conditioning/dominant-mode';
 import type { Finding } from '../contract/finding';
 import type { MeasureRequest } from '../contract/quantity';
 import type { DeclaredSettings, ModeIndex } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
 import { defaultFloor } from '../radiation/integration-floor';
-import { radiationRecord, type RadiationRecord } from '../radiation/radiation-record';
+import { radiationRecord, upTo, upToWords, type RadiationRecord } from '../radiation/radiation-record';
 import { stop, type At } from '../tones/measure-tones';
 import { peakOnSamples, peakOnSplines } from '../tones/peak';
 import { isIntegrated, strainTones, type StrainTones } from '../tones/strain-tone';
+import { toneName } from '../tones/tone';
+import { floorRows, highestRows, mirrorRows, type UsedRow } from '../tones/used-rows';
 
 /** One point of a claim about an inspiral, its settings filled in. */
 export interface OrbitPoint {
@@ -21,6 +24,9 @@ export interface OrbitPoint {
   readonly tones: StrainTones;
   /** Null for strain along one line of sight. */
   readonly mode: ModeIndex | null;
+  readonly lMax: number | null;
+  /** Is there more than one mode that could be followed? */
+  readonly severalModes: boolean;
   readonly startM: number;
   /** Declared, on the file's own times; null for the default of the quantity. */
   readonly declaredWindow: readonly [number, number] | null;
@@ -28,8 +34,9 @@ export interface OrbitPoint {
 
 const quadrupole: ModeIndex = [2, 2];
 
-/** (2,2), or the dominant mode where the file has none. */
-function modeOf(record: RadiationRecord): ModeIndex | null {
+/** The first mode that the claim lists; (2,2), or the dominant mode where the file has none. */
+function modeOf(record: RadiationRecord, listed: ModeIndex | undefined): ModeIndex | null {
+  if (listed !== undefined) return listed;
   if (record.modes.some(({ l, m }) => l === quadrupole[0] && m === quadrupole[1])) return quadrupole;
   const loudest = dominantMode(record.modes);
   return loudest === undefined ? null : [loudest.l, loudest.m];
@@ -51,15 +58,20 @@ export function orbitPreparer({ inputs, settings, claimId }: MeasureRequest): (a
   if ('code' in shaped) return () => shaped;
   const record = radiationRecord(shaped);
   if ('saw' in record) return () => stop('engine/no-signal', name, `Cycles cannot be followed in ${record.saw}.`, record.fix);
-  const mode = modeOf(record);
-  if (mode === null) return () => stop('engine/no-signal', name, `${name} holds no mode to follow.`, 'Supply the (2,2) mode.');
   return (at) => {
     const declared: DeclaredSettings = { ...settings, ...at };
     const startM = declared.startM ?? waveform.junkEndM ?? record.axis[0]!;
     const floor = isIntegrated(record) ? (declared.integrationFloor ?? defaultFloor(record, startM)) : null;
     if (isIntegrated(record) && floor === null) return stop('engine/no-signal', name, `The phase of the dominant mode of ${name} does not move, so there is no frequency from which to integrate.`, 'Declare integrationFloor.');
-    const tones = strainTones(record, mode, floor)!;
-    return { waveform, tones, mode: waveform.content.kind === 'modes' ? mode : null, startM, declaredWindow: declared.window ?? null };
+    const lMax = declared.lMax ?? null;
+    const used = upTo(record, lMax);
+    // Strain along a line of sight has no modes to choose from.
+    const isSet = waveform.content.kind === 'modes';
+    const mode = modeOf(used, isSet && declared.modes !== 'all' ? declared.modes?.[0] : undefined);
+    if (mode === null) return stop('engine/no-signal', name, `${name} holds no mode to follow${upToWords(lMax)}.`, 'Supply the (2,2) mode.');
+    const tones = strainTones(used, mode, floor);
+    if (tones === null) return stop('engine/modes-missing', name, `The claim follows ${toneName({ mode })}, which ${name} does not hold${upToWords(lMax)}.`, 'Supply the mode, or name one that the file holds in modes.');
+    return { waveform, tones, mode: isSet ? mode : null, lMax, severalModes: record.modes.length > 1, startM, declaredWindow: declared.window ?? null };
   };
 }
 
@@ -104,3 +116,12 @@ export const stretchByRouteA = (point: OrbitPoint, margins: Margins, by: 'polyno
 export const stretchByRouteB = (point: OrbitPoint, margins: Margins): Stretch | Finding =>
   stretchFrom(point, margins, point.declaredWindow === null ? peakOnSplines(point.tones.B) : null);
 
+/** Settings of either number of an inspiral; where the window is the default one, the start is read from it. */
+export const orbitRows = ({ waveform, mode, lMax, severalModes, startM, declaredWindow, tones }: OrbitPoint, { from, to }: Stretch, request: MeasureRequest): UsedRow[] => [
+  ...(mode === null ? [] : [{ name: 'modes', value: [mode], matters: severalModes } as const]),
+  ...highestRows(lMax),
+  { name: 'window', value: [from, to], unit: 'M', matters: true },
+  ...(declaredWindow === null ? [{ name: 'startM', value: startM, unit: 'M', matters: false } as const] : []),
+  ...floorRows(tones.floor, startM, request).filter(({ name }) => name !== 'startM'),
+  ...(mode === null ? [] : mirrorRows(completeModes(waveform), [{ m: mode[1] }])),
+];

@@ -6,7 +6,7 @@ import { measureCycles } from '../orbit/measure-cycles';
  * Shape:  one number a point.
  * Units:  cycles of (2,2), or of the dominant mode: two to an orbit.
  * Error:  U from route A's own knobs and the digits of the input.
- * Fails:  findings that stop (a window outside the record, one polarisation alone).
+ * Fails:  findings that stop (no such mode, a window outside the record, one polarisation alone).
  * Source: settings.md section 5.
  */
 export const cycles: Quantity = {
@@ -16,9 +16,9 @@ export const cycles: Quantity = {
   unit: '',
   roles: ['a'],
   needsNoise: false,
-  settings: ['window', 'startM', 'integrationFloor'],
+  settings: ['modes', 'lMax', 'window', 'startM', 'integrationFloor'],
   required: () => [],
-  sweepable: ['startM', 'integrationFloor'],
+  sweepable: ['startM', 'lMax', 'integrationFloor'],
   scale: 'absolute',
   naturalTolerance: () => 0.05,
   formula: 'N_{\\mathrm{cyc}}=\\frac{\\phi_{22}(t_2)-\\phi_{22}(t_1)}{2\\pi}',

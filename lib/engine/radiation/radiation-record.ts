@@ -26,6 +26,12 @@ export const divisionsTo = (variable: RadiationVariable, withStrain: boolean): n
 
 const isRadiation = (variable: Waveform['variable']): variable is RadiationVariable => variable in derivatives;
 
+/** The record without the modes of ℓ > lMax. */
+export const upTo = (record: RadiationRecord, lMax: number | null): RadiationRecord => (lMax === null ? record : { ...record, modes: record.modes.filter(({ l }) => l <= lMax) });
+
+/** How a claim's lMax is said behind a mode that is not there. */
+export const upToWords = (lMax: number | null): string => (lMax === null ? '' : ` up to ℓ = ${lMax}`);
+
 /** Why a waveform cannot be brought to M: said, and what would mend it. */
 export interface NotRadiation {
   readonly saw: string;

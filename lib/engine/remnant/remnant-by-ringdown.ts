@@ -7,7 +7,7 @@ import { ringdownFindings } from '../ringdown/ringdown-findings';
 import { lineByRouteA, lineByRouteB, ringdownPreparer, type FitWindow, type RingdownPoint } from '../ringdown/ringdown-point';
 import { isFinding, measureTones, stop, type At, type ToneRecipe } from '../tones/measure-tones';
 import { toneName } from '../tones/tone';
-import { floorRows, usedSettings } from '../tones/used-rows';
+import { floorRows, highestRows, mirrorRows, usedSettings } from '../tones/used-rows';
 import type { RemnantNumber } from './balance-recipe';
 import { tabulatedModes, type TabulatedMode } from './quasi-normal';
 import { kerrFromTone } from './ringdown-inversion';
@@ -48,9 +48,9 @@ function recipeOf(which: RemnantNumber, request: MeasureRequest): ToneRecipe<Rin
     computation: (point, { value }) => ringdownComputation(point, foundAt(point).window, value, reads(point)).map((line) => (line.id === 'rounding' ? rounding(line, point.scale, foundAt(point), reads(point)) : line)),
     coverage: (point) => ringdownCoverage(point, foundAt(point).window, reads(point)),
     findings: (point) => ringdownFindings(point, foundAt(point).window, foundAt(point).line),
-    settings: ({ settings, record, tones, startM }) =>
+    settings: ({ settings, record, completed, tones, startM }) =>
       usedSettings(
-        [{ name: 'method', value: 'ringdown', matters: true }, { name: 'modes', value: [settings.mode], matters: record.modes.length > 1 }, { name: 'window', value: settings.window, unit: 'M', matters: true }, ...floorRows(tones.floor, startM, request)],
+        [{ name: 'method', value: 'ringdown', matters: true }, { name: 'modes', value: [settings.mode], matters: record.modes.length > 1 }, ...highestRows(settings.lMax), { name: 'window', value: settings.window, unit: 'M', matters: true }, ...floorRows(tones.floor, startM, request), ...mirrorRows(completed, [{ m: settings.mode[1] }])],
         request,
       ),
     figures: (point) => [ringdownFigure(point.tones.A, foundAt(point).window, foundAt(point).line, `Ringdown of ${toneName(point.settings)} of ${point.completed.waveform.name}`)],

@@ -3,7 +3,7 @@ import type { Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
 import { isFinding, measureTones, stop, type At, type Reading, type ToneRecipe } from '../tones/measure-tones';
 import { toneName } from '../tones/tone';
-import { floorRows, usedSettings } from '../tones/used-rows';
+import { floorRows, highestRows, mirrorRows, usedSettings } from '../tones/used-rows';
 import type { RingdownLine } from './line-on-samples';
 import { predictedRingdown } from './predicted';
 import { ringdownComputation, ringdownCoverage, type Read } from './ringdown-budget';
@@ -60,9 +60,11 @@ function recipeOf(which: RingdownNumber, request: MeasureRequest, tolerance: (cl
       usedSettings(
         [
           { name: 'modes', value: [settings.mode], matters: record.modes.length > 1 },
+          ...highestRows(settings.lMax),
           { name: 'window', value: settings.window, unit: 'M', matters: true },
           { name: 'normaliseBy', value: settings.normaliseBy, matters: completed.waveform.binary.remnantMass !== undefined },
           ...floorRows(tones.floor, startM, request),
+          ...mirrorRows(completed, [{ m: settings.mode[1] }]),
         ],
         request,
       ),

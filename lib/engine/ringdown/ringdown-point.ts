@@ -5,7 +5,7 @@ import type { DeclaredSettings, ModeIndex } from '../contract/settings';
 import { completeModes, type CompletedModes } from '../conditioning/complete-modes';
 import { dominantMode } from '../conditioning/dominant-mode';
 import { defaultFloor } from '../radiation/integration-floor';
-import { radiationRecord, type RadiationRecord } from '../radiation/radiation-record';
+import { radiationRecord, upTo, upToWords, type RadiationRecord } from '../radiation/radiation-record';
 import { peakOnSamples, peakOnSplines } from '../tones/peak';
 import { stop, type At } from '../tones/measure-tones';
 import { isIntegrated, strainTones, type StrainTones } from '../tones/strain-tone';
@@ -15,6 +15,7 @@ import { lineOnSamples, type RingdownLine } from './line-on-samples';
 
 export interface RingdownSettings {
   readonly mode: ModeIndex;
+  readonly lMax: number | null;
   /** From the peak, in M. */
   readonly window: readonly [number, number];
   readonly normaliseBy: 'M' | 'remnant';
@@ -52,8 +53,8 @@ function scaleOf(declared: DeclaredSettings, { waveform }: CompletedModes): numb
 const noFloor = (name: string): Finding =>
   stop('engine/no-signal', name, `The phase of the dominant mode of ${name} does not move, so there is no frequency from which to integrate.`, 'Declare integrationFloor.');
 
-const missing = (name: string, mode: ModeIndex): Finding =>
-  stop('engine/modes-missing', name, `The claim fits ${toneName({ mode })}, which ${name} does not hold.`, 'Supply the mode, or name one that the file holds in modes.');
+const missing = (name: string, mode: ModeIndex, lMax: number | null): Finding =>
+  stop('engine/modes-missing', name, `The claim fits ${toneName({ mode })}, which ${name} does not hold${upToWords(lMax)}.`, 'Supply the mode, or name one that the file holds in modes.');
 
 /**
  * Fills in the settings of one point and takes its mode out of the file.
@@ -79,12 +80,14 @@ export function ringdownPreparer(request: MeasureRequest): (at: At) => RingdownP
     const startM = declared.startM ?? waveform.junkEndM ?? record.axis[0]!;
     const floor = isIntegrated(record) ? (declared.integrationFloor ?? defaultFloor(record, startM)) : null;
     if (isIntegrated(record) && floor === null) return noFloor(name);
-    const tones = strainTones(record, mode, floor);
-    const loudest = dominantMode(record.modes);
-    const peakTones = strainTones(record, houseMode, floor) ?? (loudest ? strainTones(record, [loudest.l, loudest.m], floor) : null);
-    if (tones === null || peakTones === null) return missing(name, mode);
+    const lMax = declared.lMax ?? null;
+    const used = upTo(record, lMax);
+    const tones = strainTones(used, mode, floor);
+    const loudest = dominantMode(used.modes);
+    const peakTones = strainTones(used, houseMode, floor) ?? (loudest ? strainTones(used, [loudest.l, loudest.m], floor) : null);
+    if (tones === null || peakTones === null) return missing(name, mode, lMax);
     const normaliseBy = declared.normaliseBy === 'remnant' ? 'remnant' : 'M';
-    return { completed, record, startM, settings: { mode, window: declared.window ?? ringdownWindow, normaliseBy }, tones, peakTones, scale };
+    return { completed, record, startM, settings: { mode, lMax, window: declared.window ?? ringdownWindow, normaliseBy }, tones, peakTones, scale };
   };
 }
 

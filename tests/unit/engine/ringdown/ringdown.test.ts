@@ -57,6 +57,24 @@ describe('a ringdown, what it rests on', () => {
     const wave = modeSet(axis, [modeFrom(axis, 2, 2, shape), mirror]);
     for (const route of ['A', 'B'] as const) expect(toneBy(route, ringdownFrequency, { a: wave }, { modes: [[2, -2]] })).toAgreeWith(OMEGA, { relative: 1e-9 });
   });
+  it('is swept over lMax, which leaves out modes above it', () => {
+    const late = modeFrom(axis, 3, 3, swellAndRing(0.1, 0.85, 0.09, 4));
+    const wave = modeSet(axis, [modeFrom(axis, 2, 2, shape), late]);
+    for (const quantity of both) {
+      expect(quantity.sweepable).toContain('lMax');
+      const { points, settings, assumed } = measureTonesOf(quantity, { a: wave }, { modes: [[2, 2], [3, 3]] }, { setting: 'lMax', values: [2, 3] });
+      expect(points[0]!.value).toBe(points[1]!.value);
+      expect(settings).toContainEqual(expect.objectContaining({ name: 'lMax', standing: 'swept' }));
+      expect(assumed).not.toContain('lMax');
+    }
+    expect(codes(wave, { modes: [[3, 3]], lMax: 2 })).toEqual(['engine/modes-missing stops-lodging']);
+    expect(toneBy('A', ringdownFrequency, { a: wave }, { modes: [[3, 3]], lMax: 3 })).toAgreeWith(0.85, { relative: 1e-9 });
+  });
+  it('lists the mirror rule only where the mode that is fitted was made up by it', () => {
+    const open = { ...ring, negativeM: null };
+    expect(measureTonesOf(ringdownFrequency, { a: open }, { modes: [[2, -2]] }).assumed).toContain('negativeM');
+    expect(measureTonesOf(ringdownFrequency, { a: open }).assumed).not.toContain('negativeM');
+  });
   it('lists the defaults that could matter', () => {
     expect(measureTonesOf(ringdownFrequency, { a: ring }).assumed).toEqual(['window', 'normaliseBy']);
     expect(measureTonesOf(ringdownFrequency, { a: { ...ring, binary: {} } }, { window: [25, 60] }).assumed).toEqual([]);
