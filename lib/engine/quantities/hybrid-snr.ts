@@ -17,7 +17,7 @@ export const hybridSnr = detectorQuantity(
     symbol: String.raw`\rho_{\mathrm{hyb}}`,
     unit: '',
     roles: ['a'],
-    settings: [...loudnessSettings, 'joinHz', 'amplitudeOrder', 'massRatio'],
+    settings: [...loudnessSettings, 'joinHz', 'amplitudeOrder', 'massRatio', 'chi1z', 'chi2z'],
     sweepable: [...loudnessSweeps, 'joinHz'],
     naturalTolerance: (value) => 0.02 * Math.abs(value),
     formula: String.raw`\rho_{\mathrm{hyb}}^{2}=4\int_{f_l}^{f_j}\frac{|\tilde h_{\mathrm{PN}}|^{2}}{S}\,df+4\int_{f_j}^{f_h}\frac{|\tilde h|^{2}}{S}\,df`,

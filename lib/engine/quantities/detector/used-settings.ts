@@ -35,13 +35,15 @@ function facts({ points, waveforms, traits }: SettingsContext) {
     return taper.startIsOpen || taper.endIsOpen;
   });
   const seen = modes && (optimal || point.average === 'sky');
-  const bySight = (angle: 'inclination' | 'azimuth'): boolean => seen && !(traits.goesOver?.[angle] && point.declared[`${angle}Rad`] === undefined);
-  return { point, given, modes, several, optimal, source, open, bySight };
+  // A hybrid is face-on and plus by definition: what the claim says of that is shown, nothing is assumed.
+  const fixed = (name: 'inclinationRad' | 'azimuthRad' | 'response'): boolean => traits.joined === true && point.declared[name] === undefined;
+  const bySight = (angle: 'inclination' | 'azimuth'): boolean => seen && !fixed(`${angle}Rad`) && !(traits.goesOver?.[angle] && point.declared[`${angle}Rad`] === undefined);
+  return { point, given, modes, several, optimal, source, open, bySight, fixed };
 }
 
 function rowsOf(context: SettingsContext): Row[] {
   const { traits, waveforms } = context;
-  const { point, given, modes, several, optimal, source, open, bySight } = facts(context);
+  const { point, given, modes, several, optimal, source, open, bySight, fixed } = facts(context);
   const { declared } = point;
   const masses = massMatters(given);
   const fromDistance = source && !traits.horizon && declared.redshift === undefined;
@@ -66,7 +68,7 @@ function rowsOf(context: SettingsContext): Row[] {
     { name: 'templateMassRange', value: (p) => p.templateMassRange, unit: '× M', used: searchesMass, matters: true },
     { name: 'inclinationRad', value: (p) => p.a.inclinationRad, unit: 'rad', used: bySight('inclination'), matters: true },
     { name: 'azimuthRad', value: (p) => p.a.azimuthRad, unit: 'rad', used: bySight('azimuth'), matters: true },
-    { name: 'response', value: (p) => p.response, used: optimal, matters: true },
+    { name: 'response', value: (p) => p.response, used: optimal && !fixed('response'), matters: true },
     { name: 'modes', value: (p) => p.declared.modes ?? houseValues.modes, used: modes, matters: several },
     { name: 'lMax', value: (p) => p.declared.lMax, used: declared.lMax !== undefined, matters: false },
     {

@@ -77,6 +77,16 @@ describe('a hybrid', { timeout: 120_000 }, () => {
     expect(hybrid(settings).findings.map(({ code, level }) => `${code} ${level}`)).toContain('engine/hybrid-face-on stops-lodging');
   });
 
+  it('takes spins without effect, and assumes nothing of what it fixes itself', () => {
+    const { settings } = quantities.get('hybrid-snr')!;
+    expect(settings).toEqual(expect.arrayContaining(['chi1z', 'chi2z']));
+    const [plain, spinning] = [hybrid(), hybrid({ chi1z: 0.5, chi2z: -0.5 })];
+    expect(spinning.points[0]!.value).toBe(plain.points[0]!.value);
+    for (const { assumed } of [plain, spinning]) for (const name of ['chi1z', 'chi2z', 'inclinationRad', 'azimuthRad', 'response']) expect(assumed).not.toContain(name);
+    expect(plain.assumed).toEqual(expect.arrayContaining(['modes', 'detectors', 'amplitudeOrder']));
+    expect(hybrid({ response: 'plus' }).settings).toContainEqual({ name: 'response', value: 'plus', standing: 'declared' });
+  });
+
   it('needs a join and a mass ratio', () => {
     const required = (binaryFacts: object) => quantities.get('hybrid-snr')!.required({ of: { a: { ...a, binary: binaryFacts } }, noise: null }, { totalMassMsun: 20, distanceMpc: 400 }, null);
     expect(required({})).toEqual(['joinHz', 'massRatio']);
