@@ -10,8 +10,8 @@ import { missingModesFindings, negativeModesFinding } from './radiation-findings
 import { house, NO_FLOOR, sampledAs, type EllShare, type Outcome, type RadiationRecipe } from './radiation-recipe';
 import { listedButMissing, restrictsModes } from './used-modes';
 
-function outcomeOf({ record, settings, norm }: PreparedPoint, modes: readonly ModeEnergy[], route: 'A' | 'B'): Outcome | null {
-  const before = settings.binary === null ? (settings.rule === false ? 0 : null) : energyBefore(record, settings.startM, settings.rule, settings.binary, route);
+function outcomeOf({ whole, settings, norm }: PreparedPoint, modes: readonly ModeEnergy[], route: 'A' | 'B'): Outcome | null {
+  const before = settings.binary === null ? (settings.rule === false ? 0 : null) : energyBefore(whole, settings.startM, settings.rule, settings.binary, route);
   if (before === null) return null;
   const components: Record<string, number | null> = {};
   for (const { l, m, energy } of modes) components[`E:${l},${m}`] = energy / norm;

@@ -15,6 +15,8 @@ export interface PreparedPoint {
   readonly at: At;
   readonly declared: DeclaredSettings;
   readonly record: RadiationRecord;
+  /** All modes of the file, whatever modes the claim then uses. */
+  readonly whole: RadiationRecord;
   readonly settings: RadiationSettings;
   /** Mass to which the number is referred, in M. */
   readonly norm: number;
@@ -86,6 +88,6 @@ export function preparerOf(completed: Waveform, claim: MeasureRequest, recipe: R
     if (divisionsTo(record.variable, recipe.withStrain) > 0 && settings.floor === null) return noFloor(name);
     const norm = normOf(settings, completed, recipe);
     if ('code' in norm) return norm;
-    return startFinding(settings, record, name) ?? { at, declared, record, settings, ...norm };
+    return startFinding(settings, record, name) ?? { at, declared, record, whole, settings, ...norm };
   };
 }

@@ -82,6 +82,16 @@ describe('radiated energy, sweeps', () => {
     m.points.forEach((p, i) => expect(p.routes.B === null).toBe(!m.routeBPoints.includes(i)));
   });
 
+  it.each([true, 'removed'] as const)('reads the start of what is added (%s) from the (2,2) mode of the file, whatever modes are summed', (includeEnergyBeforeStart) => {
+    const settings = { includeEnergyBeforeStart, startM: -20 };
+    const [all, some] = [measureEnergyOf(wave, settings), measureEnergyOf(wave, { ...settings, modes: [[3, 3], [3, -3]] })].map(({ points }) => points[0]!);
+    const { 'E:3,3': up, 'E:3,-3': down, before } = some!.components!;
+    expect(before).toBe(all!.components!.before);
+    expect(before!).toBeGreaterThan(0);
+    expect(some!.value).toAgreeWith(up! + down! + before!, 1e-15);
+    expect(some!.routes.B! / some!.routes.A!).toAgreeWith(1, 1e-6);
+  });
+
   it('leaves out what lies above lMax', () => {
     const [two, three] = measureEnergyOf(wave, {}, { setting: 'lMax', values: [2, 3] }).points;
     expect(two!.value).toAgreeWith(value(wave, { modes: [[2, 2], [2, -2]] }), 1e-18);
