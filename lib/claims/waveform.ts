@@ -40,7 +40,7 @@ function declarationOf(name: string, raw: RawWaveform, files: SourceFile[], colu
     timeUnit: raw.timeUnit ?? (domain === 'time' ? 'M' : '1/M'),
     amplitudeUnit: raw.amplitudeUnit ?? (raw.variable === 'phi2' ? 'geometric' : 'rh/M'),
     polarisation: raw.polarisation ?? 'plus-minus-i-cross',
-    // φ₂ has no mirror rule: its modes are those that are given.
+    // φ₂ has no mirror rule: its modes are those that are given, whatever the sheet says.
     negativeM: raw.variable === 'phi2' ? 'given' : (raw.negativeM ?? null),
     psi4Factor: raw.psi4Factor ?? 1,
     mode: raw.mode ?? [2, 2],
@@ -81,8 +81,9 @@ function unitProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
   const units = domain === 'time' ? ['M', 's'] : ['1/M', 'Hz'];
   if (raw.timeUnit !== undefined && !units.includes(raw.timeUnit)) return [refused(pointer(...path, 'timeUnit'), raw.timeUnit, `"${units[0]}" or "${units[1]}" for domain "${domain}"`)];
   const physicalTime = raw.timeUnit === 's' || raw.timeUnit === 'Hz';
-  if (raw.tetrad !== undefined && raw.variable !== 'phi2') problems.push(refused(pointer(...path, 'tetrad'), raw.tetrad, 'it only beside variable "phi2"'));
-  if (raw.psi4Factor !== undefined && raw.variable !== 'psi4') problems.push(refused(pointer(...path, 'psi4Factor'), raw.psi4Factor, 'it only beside variable "psi4"'));
+  // A word that only restates the house default says nothing wrong.
+  if (raw.tetrad !== undefined && raw.tetrad !== 'symmetric' && raw.variable !== 'phi2') problems.push(refused(pointer(...path, 'tetrad'), raw.tetrad, 'it only beside variable "phi2"'));
+  if (raw.psi4Factor !== undefined && raw.psi4Factor !== 1 && raw.variable !== 'psi4') problems.push(refused(pointer(...path, 'psi4Factor'), raw.psi4Factor, 'it only beside variable "psi4"'));
   if (raw.variable === 'luminosity') return [...problems, ...luminosityProblems(raw, path)];
   if (raw.variable === 'phi2') return [...problems, ...phi2Problems(raw, path)];
   const amplitude = raw.amplitudeUnit ?? 'rh/M';
@@ -106,7 +107,6 @@ function phi2Problems(raw: RawWaveform, path: readonly string[]): Problem[] {
   if (raw.domain === 'frequency') problems.push(refused(pointer(...path, 'domain'), raw.domain, '"time" for φ₂'));
   if (raw.timeUnit !== undefined && raw.timeUnit !== 'M') problems.push(refused(pointer(...path, 'timeUnit'), raw.timeUnit, '"M" for φ₂'));
   if (raw.amplitudeUnit === 'rh/M' || raw.amplitudeUnit === 'strain') problems.push(refused(pointer(...path, 'amplitudeUnit'), raw.amplitudeUnit, '"geometric" or "perField" for φ₂'));
-  if (raw.negativeM !== undefined && raw.negativeM !== 'given') problems.push(refused(pointer(...path, 'negativeM'), raw.negativeM, '"given" for φ₂, which has no mirror rule'));
   return problems;
 }
 

@@ -37,6 +37,16 @@ describe('a good sheet', () => {
     expect(parsed.value.claims[0]).toMatchObject({ id: 'C1', of: { a: 'A', b: 'B' }, noise: 'S', over: null, tolerance: null });
   });
 
+  it.each<[string, Json, Json]>([
+    ['a ψ₄ factor of one for strain', { psi4Factor: 1 }, { psi4Factor: 1 }],
+    ['the symmetric tetrad outside φ₂', { tetrad: 'symmetric' }, { variable: 'strain' }],
+    ['a mirror for φ₂, whose modes are always those given', { variable: 'phi2', negativeM: 'mirror' }, { negativeM: 'given' }],
+    ['none for φ₂ as well', { variable: 'phi2', negativeM: 'none' }, { negativeM: 'given' }],
+  ])('may say %s, which changes nothing', (_, words, expected) => {
+    const parsed = parseClaimSheet(withWaveform({ file: 'x.txt', columns: ['t', 're22', 'im22'], ...words }), smallCatalogue());
+    expect(parsed.ok && parsed.value.waveforms.get('X')).toMatchObject(expected);
+  });
+
   it('may set one bound for a whole sweep, and a tolerance beside a bound changes nothing', () => {
     const read = parseClaimSheet(withClaim(match({ settings: {}, over: { totalMassMsun: [60, 100] }, claimed: { above: 0.9 }, tolerance: 0.1 })), smallCatalogue());
     expect(read.ok && read.value.claims[0]?.claimed).toEqual([{ kind: 'above', bound: 0.9, printed: expect.any(String) }, { kind: 'above', bound: 0.9, printed: expect.any(String) }]);
@@ -127,6 +137,7 @@ describe('a bad sheet is refused with every problem, its place, what was seen an
     ['seconds with rh/M', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], timeUnit: 's' }), '/waveforms/X/amplitudeUnit'],
     ['hertz in the time domain', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], timeUnit: 'Hz' }), '/waveforms/X/timeUnit: saw "Hz"; expected "M" or "s" for domain "time".'],
     ['a ψ₄ factor for strain', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], psi4Factor: 2 }), '/waveforms/X/psi4Factor: saw 2; expected it only beside variable "psi4".'],
+    ['another tetrad for strain', withWaveform({ file: 'x.txt', columns: ['t', 're', 'im'], tetrad: 'kinnersley' }), '/waveforms/X/tetrad: saw "kinnersley"; expected it only beside variable "phi2".'],
     ['an HDF5 file without datasets', withWaveform({ file: 'x.h5', columns: ['t', 're', 'im'] }), '/waveforms/X/datasets: saw nothing; expected the datasets of the file, such as {"2,2": "/l2_m2"}'],
     ['a variable that the quantity has no meaning for', { ...withWaveform({ file: 'x.txt', variable: 'phi2', columns: ['t', 're11', 'im11'] }), claims: [match({ of: { a: 'A', b: 'X' } })] }, '/claims/0/of/b: saw "X", which holds phi2; expected strain, news, psi4 as "b" of match.'],
     ['a gravitational unit for φ₂', withWaveform({ file: 'x.txt', variable: 'phi2', columns: ['t', 're', 'im'], amplitudeUnit: 'rh/M' }), '/waveforms/X/amplitudeUnit: saw "rh/M"; expected "geometric" or "perField" for φ₂.'],
