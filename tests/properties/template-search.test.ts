@@ -2,14 +2,14 @@ import { describe, expect, it } from 'vitest';
 import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import type { MaximiseOver } from '@/lib/engine/contract/settings';
 import type { Side, TemplateRequest } from '@/lib/engine/contract/route';
-import { pairRequest } from '@/lib/engine/routes/a/best-templates';
+import { hillsOf, pairRequest } from '@/lib/engine/routes/a/best-templates';
 import { JointSearch } from '@/lib/engine/routes/a/joint-search';
 import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import { createRouteA } from '@/lib/engine/routes/a/route-a';
 import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { routeB } from '@/lib/engine/routes/b/route-b';
 import { MSUN_S } from '@/lib/engine/units/constants';
-import { binary, curve } from '../support/detector-claims';
+import { binary, curve, inMasses } from '../support/detector-claims';
 import { seededRandom } from '../support/seeded-random';
 
 const random = seededRandom(11);
@@ -18,6 +18,20 @@ const drawn = (massMsun: number): Side => {
   const c = conditionWaveform(binary('drawn', { massRatio: 1 + 2 * random(), chi1z: spin, chi2z: spin, mOmega0: 0.03, stepM: 1, modes: ['22'] }), 'all');
   return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: massMsun * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
 };
+const rise = (x: number): number => 1 / (1 + Math.exp(-x));
+/** An inspiral that swells late and rings off in three modes: what a scan reads roughly lies a per cent below its match there. */
+function threeModes(stretch: number): Side {
+  const times = Float64Array.from({ length: 1401 }, (_, t) => t);
+  const swept = (t: number): number => 0.05 * (1 - Math.min(t, 1150) / 1256) ** -0.375;
+  const omega = (t: number): number => swept(t) + (0.55 - swept(t)) * rise((t - 1100) / 10);
+  const size = (t: number): number => (0.03 + 0.07 * rise((t - 1000) / 30)) / Math.cosh(Math.max(0, t - 1100) / 11.5);
+  const phases = new Float64Array(times.length);
+  for (let i = 1; i < phases.length; i++) phases[i] = phases[i - 1]! + (omega(i - 1) + 4 * omega(i - 0.5) + omega(i)) / 6;
+  const phase = (t: number): number => phases[t]!;
+  const mode = (l: number, m: number, share: number) => ({ l, m, re: times.map((t) => share * size(t) * Math.cos((m * phase(t)) / 2)), im: times.map((t) => -share * size(t) * Math.sin((m * phase(t)) / 2)) });
+  const c = conditionWaveform(inMasses('swelling', times.map((t) => stretch * t), [mode(2, 2, 1), mode(2, 1, 0.1), mode(3, 3, 0.15)], { negativeM: 'mirror' }), 'all');
+  return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: 100 * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
+}
 const rescale = (side: Side, factor: number): Side => ({ ...side, secondsPerUnit: side.secondsPerUnit * factor });
 const requestOf = (templates: readonly Side[], fLowHz: number, range: readonly [number, number]): TemplateRequest => ({
   templates,
@@ -74,4 +88,21 @@ describe('the search over many templates', () => {
     const [outside] = createRouteA().bestTemplates([a], { ...request, templates: [copy], templateMassRange: [0.9, 1.12] });
     expect(outside!.outcome).toMatchObject({ onBound: true, massFactor: 1.12 });
   });
+
+  it('climbs to the top beside which a rough value points', () => {
+    const factors = [0.9, 0.92, 0.94, 0.96, 0.98];
+    const sharp = [0.9, 0.95, 0.99, 1, 0.97];
+    // The rough value at the top is low by one and a half per cent, the one beside it by next to nothing.
+    const scan = { rough: Float32Array.of(0.88, 0.93, 0.9899, 0.985, 0.95), sharp: (_s: number, _t: number, factor: number) => sharp[factors.indexOf(factor)]! };
+    expect(hillsOf(scan, 0, 1, factors).map(({ factor }) => factor)).toEqual([3]);
+  });
+
+  it('finds a stretched copy wherever the grid of masses begins', () => {
+    const [a, copy] = [threeModes(1), threeModes(1.1)];
+    for (const low of [0.66, 0.676, 0.688, 0.752]) {
+      const [found] = createRouteA().bestTemplates([a], requestOf([copy], 20, [low, 1.4]));
+      expect(found!.outcome.match, `from ${low}`).toAgreeWith(1, 1e-7);
+      expect(found!.outcome.massFactor, `from ${low}`).toAgreeWith(1 / 1.1, 2e-5);
+    }
+  }, 60_000);
 });

@@ -28,14 +28,17 @@ export function isScannable(signals: readonly Side[], request: TemplateRequest):
 
 export const pairRequest = ({ templates, onStep: _, ...shared }: TemplateRequest, a: Side, index: number): MatchRequest => ({ ...shared, a, b: templates[index]! });
 
-/** What the rough values of a scan can be low by: more where signals match so little that several lags are nearly as good. */
-const roughBelow = (best: number): number => (best > 0.8 ? 0.003 : 0.02);
+/** What the rough values of a scan can be low by: 1.1 % was seen on the flanks of a hill. */
+const ROUGH_BELOW = 0.02;
 /** What the sharp ones can be off by. */
 const SHARP = 5e-5;
 /** Of ln of the factor (rule 2.7). */
 const REFINED = 1e-5;
 /** Numbers kept by one scan. */
 const MOST_PAIRS = 1 << 24;
+
+/** What the search reads of a scan. */
+type Scanned = Pick<TemplateScan, 'rough' | 'sharp'>;
 
 interface Hill {
   readonly template: number;
@@ -50,7 +53,7 @@ class SharpValues {
   private readonly known = new Map<number, number>();
 
   constructor(
-    private readonly scan: TemplateScan,
+    private readonly scan: Scanned,
     private readonly signal: number,
     private readonly factors: readonly number[],
   ) {}
@@ -66,11 +69,11 @@ class SharpValues {
 }
 
 /** Grid points that could stand beside the best match, by mass, since a scan holds the spectra of one mass at a time. */
-function likely(scan: TemplateScan, s: number, templates: number, factors: number): { t: number; g: number }[] {
+function likely(scan: Scanned, s: number, templates: number, factors: number): { t: number; g: number }[] {
   const rough = (t: number, g: number): number => scan.rough[(s * templates + t) * factors + g]!;
   let best = 0;
   for (let t = 0; t < templates; t++) for (let g = 0; g < factors; g++) best = Math.max(best, rough(t, g));
-  const least = 1 - roughBelow(best);
+  const least = 1 - ROUGH_BELOW;
   const found: { t: number; g: number }[] = [];
   for (let g = 0; g < factors; g++) {
     for (let t = 0; t < templates; t++) {
@@ -114,17 +117,29 @@ function riseOf(values: SharpValues, t: number, g: number, factors: number): num
   return Math.min(drop / 2, Math.max(four, two) + 2 * Math.abs(four - two));
 }
 
-/** Grid points above both neighbours that could hide the best match, the most promising first. */
-function hillsOf(scan: TemplateScan, s: number, templates: number, factors: readonly number[]): Hill[] {
+/** The grid point above both neighbours that lies uphill: a rough value may point beside the top. */
+function uphill(values: SharpValues, t: number, from: number, factors: number): number {
+  for (let g = from; ; ) {
+    const higher = [g - 1, g + 1].find((at) => at >= 0 && at < factors && values.at(t, at) > values.at(t, g) + SHARP);
+    if (higher === undefined) return g;
+    g = higher;
+  }
+}
+
+/**
+ * Grid points above both neighbours that could hide the best match, the most promising first.
+ * Shape:  one entry a hill of one signal.
+ * Units:  places in the lists of templates and factors; ceilings are matches.
+ * Error:  a hill is missed only where every rough value on it is low by more than two per cent.
+ * Fails:  never; no power gives no hill.
+ * Source: settings.md rule 2.7.
+ */
+export function hillsOf(scan: Scanned, s: number, templates: number, factors: readonly number[]): Hill[] {
   const values = new SharpValues(scan, s, factors);
   const places = likely(scan, s, templates, factors.length);
   for (const { t, g } of places) values.at(t, g);
-  const hills = places.flatMap(({ t, g }): Hill[] => {
-    const here = values.at(t, g);
-    const beside = [g - 1, g + 1].filter((at) => at >= 0 && at < factors.length);
-    if (beside.some((at) => values.at(t, at) > here + SHARP)) return [];
-    return [{ template: t, factor: g, ceiling: here + riseOf(values, t, g, factors.length) + SHARP }];
-  });
+  const tops = new Map(places.map(({ t, g }) => { const top = uphill(values, t, g, factors.length); return [`${t} ${top}`, { t, g: top }] as const; }));
+  const hills = [...tops.values()].map(({ t, g }): Hill => ({ template: t, factor: g, ceiling: values.at(t, g) + riseOf(values, t, g, factors.length) + SHARP }));
   return hills.sort((p, q) => q.ceiling - p.ceiling || p.template - q.template || p.factor - q.factor);
 }
 

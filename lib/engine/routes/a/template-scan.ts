@@ -146,7 +146,7 @@ function benchMaker({ signals, factors, request, store, numerics }: ScanRequest)
  * Looks at every signal with every template at every factor on the template's mass.
  * Shape:  time-domain sides in one real response, time and phase free.
  * Units:  dimensionless.
- * Error:  rough: low by some 0.5 % of the match; sharp: 2e-5, the bins' own.
+ * Error:  rough: low by some 0.5 % of the match at its tops, 1 % beside them; sharp: 2e-5, the bins' own.
  * Fails:  never; sides without power in the band give 0.
  * Source: engine design: spectra of all templates once; a mass only stretches the frequencies.
  */
