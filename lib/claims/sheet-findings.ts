@@ -1,10 +1,20 @@
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { DeclaredSettings } from '@/lib/engine/contract/settings';
 import type { BinaryFacts } from '@/lib/engine/contract/waveform';
 
 /** V22 and V23: facts about the binary that contradict each other or physics. The level says whether a number is still worth computing. */
 export function sheetFindings(w: Pick<WaveformDeclaration, 'name' | 'binary'>): Finding[] {
   return [...spinFindings(w.name, w.binary), ...massFindings(w.name, w.binary)];
+}
+
+/** V22 for a mass ratio that the claim itself declares, whatever quantity takes it. */
+export function claimFindings({ id, settings }: { readonly id: string; readonly settings: Pick<DeclaredSettings, 'massRatio'> }): Finding[] {
+  const { massRatio: q } = settings;
+  if (q === undefined || q >= 1) return [];
+  const turned = Number((1 / q).toPrecision(6));
+  const text = `massRatio is ${q}; the house order is heavier over lighter, q ≥ 1. The number was computed with chi1z on the lighter body.`;
+  return [{ code: 'claims/mass-sums', level: 'needs-answer', where: id, text, fix: `Give ${turned} and exchange chi1z and chi2z, or exchange nothing if the spins already stand in that order.` }];
 }
 
 function spinFindings(where: string, binary: BinaryFacts): Finding[] {

@@ -1,5 +1,6 @@
 import { waveformNames, type Claim, type ClaimSheet } from '@/lib/claims/claim';
 import { inputRoles } from '@/lib/claims/claim-inputs';
+import { claimFindings } from '@/lib/claims/sheet-findings';
 import { completeMeasurement } from '@/lib/engine/budget/complete-measurement';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { Measurement } from '@/lib/engine/contract/measurement';
@@ -28,7 +29,7 @@ function inputFindings(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Finding
   const names = waveformNames(claim.of);
   const ofWaveforms = names.flatMap((name) => inputs.waveforms.get(name)?.findings ?? []);
   const ofNoise = claim.noise === null ? [] : (inputs.noise.get(claim.noise)?.findings ?? []);
-  return [...ofWaveforms, ...ofNoise, ...duplicateFindings(claim, sheet, inputs.files)];
+  return [...ofWaveforms, ...ofNoise, ...claimFindings(claim), ...duplicateFindings(claim, sheet, inputs.files)];
 }
 
 function resolve(claim: Claim, sheet: ClaimSheet, inputs: Inputs): QuantityInputs | null {

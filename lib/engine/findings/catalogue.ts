@@ -153,7 +153,7 @@ const numbered: readonly CatalogueRow[] = [
   },
   {
     code: 'claims/mass-sums', numbers: ['V22'], part: 'facts', levels: asks, concerns: 'all',
-    rule: 'Masses in the sheet or in a file’s header contradict each other: components that do not add to the total by more than 10⁻³, a mass ratio that is another, a remnant heavier than the system.',
+    rule: 'Masses in the sheet or in a file’s header contradict each other: components that do not add to the total by more than 10⁻³, a mass ratio that is another or below one, a remnant heavier than the system.',
     advice: 'Give masses in units of the initial total mass, the heavier body first.',
   },
   {

@@ -3,13 +3,6 @@ import type { MeasureRequest } from '../contract/quantity';
 import type { FitPoint } from './fit-point';
 import { groups } from './published-fits';
 
-/** V22 for a mass ratio that the claim itself declares; those of waveforms are read with the sheet. */
-function labels({ settings, claimId }: MeasureRequest): Finding[] {
-  const q = settings.massRatio;
-  if (q === undefined || q >= 1) return [];
-  return [{ code: 'claims/mass-sums', level: 'needs-answer', where: claimId, text: `massRatio is ${q}; the house order is heavier over lighter, q ≥ 1. The fits were read for ${Number((1 / q).toPrecision(6))} with chi2z on the heavier body.`, fix: `Give ${Number((1 / q).toPrecision(6))} and exchange chi1z and chi2z, or exchange nothing if the spins already stand in that order.` }];
-}
-
 function beyond({ observable, fit, binary }: FitPoint, where: string): Finding[] {
   const spin = Math.max(Math.abs(binary.chi1z), Math.abs(binary.chi2z));
   const outside = groups.filter(({ name, says, madeFrom }) => (fit === 'mean' || fit === name) && says[observable] !== undefined && madeFrom !== undefined && (binary.massRatio > madeFrom.massRatio || spin > madeFrom.spin));
@@ -21,11 +14,11 @@ function beyond({ observable, fit, binary }: FitPoint, where: string): Finding[]
 }
 
 /**
- * What the use of a fit leaves to ask: labels the other way round, parameters beyond those it was made from.
+ * What the use of a fit leaves to ask: parameters beyond those it was made from.
  * Shape:  a list, empty when there is nothing to say.
  * Units:  dimensionless.
  * Error:  none: thresholds only.
  * Fails:  never.
  * Source: settings.md section 1; ranges from public source text that quotes the papers.
  */
-export const fitFindings = (point: FitPoint, request: MeasureRequest): Finding[] => [...labels(request), ...beyond(point, request.claimId)];
+export const fitFindings = (point: FitPoint, request: MeasureRequest): Finding[] => beyond(point, request.claimId);

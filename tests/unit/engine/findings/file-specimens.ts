@@ -14,6 +14,8 @@ const energySheet = (a: object = {}, more: object = {}) => ({
   claims: [{ id: 'C1', quantity: 'radiated-energy', of: { a: 'A' }, claimed: '0.01', ...more }],
 });
 const energy = (lines: readonly string[], a: object = {}) => findingsOfSheet(energySheet(a), { 'a.txt': `${lines.join('\n')}\n` });
+const declared = (settings: object) => findingsOfSheet(energySheet({}, { settings }), { 'a.txt': `${rows.join('\n')}\n` });
+const fitOf = (settings: object) => findingsOfSheet({ claims: [{ id: 'C1', quantity: 'remnant-fit', of: {}, settings, claimed: '0.96' }] }, {});
 const replaced = (at: number, ...lines: string[]): string[] => [...rows.slice(0, at), ...lines, ...rows.slice(at + 1)];
 
 const pairSheet = (second: string) => ({
@@ -89,6 +91,14 @@ export const fileSpecimens: readonly FindingSpecimen[] = [
   {
     number: 'V22', code: 'claims/mass-sums', level: 'needs-answer', when: 'the remnant is heavier than the system',
     raises: () => energy(rows, { binary: { admEnergy: 0.99, remnantMass: 0.995 } }), says: ['0.995', '0.99'], silent: () => energy(rows, { binary: { admEnergy: 0.99, remnantMass: 0.952 } }),
+  },
+  {
+    number: 'V22', code: 'claims/mass-sums', level: 'needs-answer', when: 'a claim on a waveform declares a mass ratio below one',
+    raises: () => declared({ includeEnergyBeforeStart: true, massRatio: 0.5 }), says: ['massRatio is 0.5', 'q ≥ 1'], silent: () => declared({ includeEnergyBeforeStart: true, massRatio: 2 }),
+  },
+  {
+    number: 'V22', code: 'claims/mass-sums', level: 'needs-answer', when: 'a claim on no waveform declares a mass ratio below one',
+    raises: () => fitOf({ massRatio: 0.5 }), says: ['massRatio is 0.5', 'q ≥ 1'], silent: () => fitOf({ massRatio: 2 }),
   },
   {
     number: 'V23', code: 'claims/spin-above-one', level: 'stops-lodging', when: 'a spin is 1.44',

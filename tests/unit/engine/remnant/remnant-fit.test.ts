@@ -61,10 +61,9 @@ describe('a published fit', () => {
       expect(codes(found)).toEqual(['engine/fit-not-applicable']);
     }
   });
-  it('reads a mass ratio below one with the heavier body first, and asks', () => {
+  it('reads a mass ratio below one with the heavier body first', () => {
     const found = measure({ massRatio: 1 / 3, chi1z: 0.2, chi2z: 0.5, observable: 'recoil' });
     expect(found.points[0]!.value).toAgreeWith(118.5, 0.06);
-    expect(found.findings[0]).toMatchObject({ code: 'claims/mass-sums', level: 'needs-answer', text: expect.stringContaining('0.333') });
   });
   it('says when it is continued beyond what it was made from', () => {
     const found = measure({ massRatio: 30, chi1z: 0, chi2z: 0 });
