@@ -1,4 +1,5 @@
 import type { Finding } from '@/lib/engine/contract/finding';
+import { quote } from './text/diagnose-line';
 import type { CommentLine } from './text/table';
 
 /** What a line of a file's header gives away, and the word for it. The finding never repeats it. */
@@ -9,11 +10,41 @@ const signs: readonly { readonly pattern: RegExp; readonly what: string }[] = [
   { pattern: /[A-Za-z0-9._%+-]+@[A-Za-z0-9-]+(\.[A-Za-z0-9-]+)*\.[A-Za-z]{2,}\b/, what: 'an address of e-mail' },
   { pattern: /\b(user|username|userid|login|uid|logname)\s*[:=]\s*\S+/i, what: 'the name of a user' },
   { pattern: /\b[a-z][a-z0-9_-]*@[a-z][a-z0-9.-]*:/, what: 'a user and a machine' },
+  { pattern: /(^|[^\w.])\/mnt\/[A-Za-z0-9._-]+/, what: 'a path of somebody’s machine' },
+  { pattern: /\b(authors?|creators?)[ _-](names?|e-?mails?)\s*[:=]\s*\S|\bauthors?\s*[:=]\s*\S/i, what: 'the name of an author' },
+  // A program may have made a file and may be named: only what is written as a person's name counts.
+  { pattern: /\b(([Cc]reated|[Ww]ritten)[ _-][Bb]y|[Cc]reator)\s*[:=]?\s*(([A-Z]\.\s*)+[A-Z]\p{L}+|[A-Z]\p{Ll}+ [A-Z]\p{Ll}+(?=\s*($|[,;.]|on\b|at\b)))/u, what: 'the name of an author' },
+  { pattern: /\bhost([ _-]?name)?\s*[:=]\s*\S/i, what: 'the name of a machine' },
 ];
 
-const identityIn = (text: string): string | null => signs.find(({ pattern }) => pattern.test(text))?.what ?? null;
+export const identityIn = (text: string): string | null => signs.find(({ pattern }) => pattern.test(text))?.what ?? null;
+
+/** An attribute of an array file that gives somebody away, with the path of what it is an attribute of. */
+export interface IdentityMark {
+  readonly path: string;
+  readonly name: string;
+  readonly what: string;
+}
 
 const mostNamed = 5;
+const handedOn = 'The file is given to referees, and with a record to everybody, as it was attached.';
+const fix = 'Attach the file without it, or answer that it may stay.';
+
+/** V29 for the attributes of an array file, one finding a file. */
+export function identityOfMarks(file: string, marks: readonly IdentityMark[]): Finding[] {
+  const [first] = marks;
+  if (first === undefined) return [];
+  const others = marks.slice(1, mostNamed).map(({ path, name }) => `${quote(name)} of ${quote(path)}`);
+  const more = marks.length > mostNamed ? ' and others' : '';
+  const also = others.length === 0 ? '' : ` So ${others.length === 1 ? 'does' : 'do'} ${others.join(', ')}${more}.`;
+  return [{
+    code: 'formats/hidden-identity',
+    level: 'needs-answer',
+    where: `${file}:${first.path}`,
+    text: `The attribute ${quote(first.name)} of ${quote(first.path)} in ${file} contains ${first.what}.${also} ${handedOn}`,
+    fix,
+  }];
+}
 
 /** V29: header lines by which a reader could tell whose file it is, one finding a file. */
 export function identityFindings(file: string, comments: readonly CommentLine[]): Finding[] {
@@ -31,8 +62,8 @@ export function identityFindings(file: string, comments: readonly CommentLine[])
       code: 'formats/hidden-identity',
       level: 'needs-answer',
       where: `${file}:${first.line}`,
-      text: `Header line ${first.line} of ${file} contains ${first.what}.${also} The file is given to referees, and with a record to everybody, as it was attached.`,
-      fix: 'Attach the file without it, or answer that it may stay.',
+      text: `Header line ${first.line} of ${file} contains ${first.what}.${also} ${handedOn}`,
+      fix,
     },
   ];
 }

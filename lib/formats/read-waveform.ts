@@ -53,7 +53,9 @@ async function readArrayWaveform(declaration: WaveformDeclaration, layout: Array
   }
   const files = collect(read);
   if (!files.ok) return files;
-  return assembleWaveform({ ...declaration, columns: files.value[0]!.columns }, files.value.flatMap(({ tables }) => tables));
+  const whole = assembleWaveform({ ...declaration, columns: files.value[0]!.columns }, files.value.flatMap(({ tables }) => tables));
+  if (!whole.ok || whole.value.waveform === null) return whole;
+  return ok({ ...whole.value, findings: [...whole.value.findings, ...files.value.flatMap(({ findings }) => findings)] });
 }
 
 /** The synchronous half, for a browser that has parsed the bytes itself. */

@@ -5,6 +5,7 @@ import { npyStructure, npzStructure } from '@/lib/formats/npy/npy-structure';
 import { hdf5Source } from '@/lib/formats/hdf5/hdf5-source';
 import { hdf5Structure } from '@/lib/formats/hdf5/hdf5-structure';
 import { faultOf } from '@/lib/formats/hdf5/hdf5-faults';
+import { identityMarks } from '@/lib/formats/hdf5/identity-marks';
 import { capMemory, libraryIsHere, openOneFile, type RandomAccess } from '@/lib/formats/hdf5/one-file';
 import { err, ok } from '@/lib/kernel/result';
 import { begins, type Hdf5Answer, type Hdf5Task } from './hdf5-task';
@@ -28,7 +29,9 @@ async function inspect({ file, ask, memoryBytes }: Hdf5Task, bytes: RandomAccess
   capMemory(memoryBytes);
   try {
     const one = await openOneFile(bytes);
-    return ask.kind === 'series' ? await readSeries(ask.wish, hdf5Source(file, one)) : ok(hdf5Structure(one));
+    if (ask.kind === 'structure') return ok(hdf5Structure(one));
+    const series = await readSeries(ask.wish, hdf5Source(file, one));
+    return series.ok ? ok({ ...series.value, marks: identityMarks(one) }) : series;
   } catch (thrown) {
     return err([faultOf(thrown, file, [])]);
   }

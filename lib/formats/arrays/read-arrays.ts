@@ -1,8 +1,10 @@
 import type { ArrayLayout } from '@/lib/engine/contract/array-layout';
+import type { Finding } from '@/lib/engine/contract/finding';
 import type { Column } from '@/lib/engine/contract/layout';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import type { ModeTable } from '../content';
+import { identityOfMarks } from '../hidden-identity';
 import { FileRefused, type OpenFile } from '../open-file';
 import { npySource } from '../npy/npy-source';
 import { openNpz } from '../npy/npz-source';
@@ -14,6 +16,7 @@ import { readSeries, type Series, type SeriesTable, type SeriesWish } from './se
 export interface ArrayTables {
   readonly columns: readonly Column[];
   readonly tables: readonly ModeTable[];
+  readonly findings: readonly Finding[];
 }
 
 export const arrayFileBytes = 512 * 2 ** 20;
@@ -25,10 +28,10 @@ export const arrayFileBytes = 512 * 2 ** 20;
 export async function readArrays(file: string, wish: SeriesWish, openFile: OpenFile, readHdf5: ReadHdf5 | null): Promise<Result<ArrayTables, Problem[]>> {
   const series = await seriesOf(file, wish, (name) => bounded(openFile(name)), readHdf5);
   if (!series.ok) return series;
-  const { columns, tables } = series.value;
+  const { columns, tables, marks = [] } = series.value;
   const short = tables.flatMap((table) => fewSamples(file, table));
   if (short.length > 0) return err(short);
-  return ok({ columns, tables: tables.map((table) => ({ table: numberTable(file, table), mode: table.mode })) });
+  return ok({ columns, tables: tables.map((table) => ({ table: numberTable(file, table), mode: table.mode })), findings: identityOfMarks(file, marks) });
 }
 
 async function seriesOf(file: string, wish: SeriesWish, open: OpenFile, readHdf5: ReadHdf5 | null): Promise<Result<Series, Problem[]>> {

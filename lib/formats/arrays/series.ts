@@ -4,6 +4,7 @@ import type { ModeIndex } from '@/lib/engine/contract/settings';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import { arrayLimits, fewerSamples, shapeText, sizeProblem, type ArrayFacts, type ArraySource, type Reading } from './array-source';
+import type { IdentityMark } from '../hidden-identity';
 import { modesArray } from './modes-array';
 
 /** Columns of one mode, or of all that have names; plain data, so that it can cross from one thread to another. */
@@ -19,6 +20,8 @@ export interface SeriesTable {
 export interface Series {
   readonly columns: readonly Column[];
   readonly tables: readonly SeriesTable[];
+  /** Of the whole file; absent where its format has no place for any. */
+  readonly marks?: readonly IdentityMark[];
 }
 
 type Read<T> = Promise<Result<T, Problem[]>>;

@@ -34,3 +34,10 @@ it('a dataset without samples is refused, as a text without rows is', async () =
   const { problems } = await open({ file: 'e.h5', datasets: { '2,2': '/none' } }, empty, readHdf5);
   expect(problems).toEqual(['e.h5:/none: saw no samples; expected at least two samples.']);
 });
+
+it('attributes anywhere in a file that say whose it is are found when it is read (V29)', async () => {
+  const { waveform, findings, problems } = await open({ file: 'w.h5', datasets: { '2,2': '/g/h22' } }, inPieces({ 'w.h5': fixture('whose.h5') }), readHdf5);
+  expect([waveform !== null, problems, findings]).toEqual([true, [], ['The attribute "author" of "/" in w.h5 contains the name of an author. So does "note" of "/g". The file is given to referees, and with a record to everybody, as it was attached.']]);
+  const silent = await open({ file: 'l.h5', datasets: { '2,2': '/R0100/l2_m2' } }, inPieces({ 'l.h5': fixture('layouts.h5') }), readHdf5);
+  expect([silent.waveform !== null, silent.findings]).toEqual([true, []]);
+});
