@@ -100,7 +100,8 @@ describe('an author', () => {
     await part('statement').locator('.katex').first().waitFor();
     await saved();
     await page.reload();
-    await expect.poll(() => page.locator('[name="claims.0.claimed"]').inputValue()).toBe('0.9186(2)');
+    // The boxes are filled when the page's script has come.
+    await expect.poll(() => page.locator('[name="claims.0.claimed"]').inputValue(), { timeout: 20_000 }).toBe('0.9186(2)');
   });
 
   it('checks it, and finds the recomputed value with its uncertainty beside the claimed one', async () => {

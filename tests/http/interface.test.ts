@@ -59,6 +59,7 @@ afterAll(async () => {
 
 const ask = (door: DoorName, what: Ask = {}): Promise<Response> => askDoor(handlers, door, what);
 const asAuthor = (door: DoorName, what: Ask = {}): Promise<Response> => ask(door, { as: bearer(token.author), params: { id: draft }, ...what });
+const bytesOf = async (answer: Promise<Response>): Promise<readonly [number, string]> => [(await answer).status, await (await answer).text()];
 const read = async <T>(answer: Response | Promise<Response>): Promise<T> => (await (await answer).json()) as T;
 const paramsFor = (door: DoorName, id: string): Record<string, string> => ({ id, ...(door.includes('{fileId}') && { fileId: UNKNOWN }), ...(door.includes('{uploadId}') && { uploadId: UNKNOWN, number: '0' }) });
 const searchFor = (door: DoorName): string => (door.endsWith('/figures') ? `?run=${UNKNOWN}` : '');
@@ -427,6 +428,10 @@ describe('every other answer fits its schema', () => {
     const held = await read<StructureView>(asAuthor('GET /api/v1/submissions/{id}/files/{fileId}/structure', { params: { id: draft, fileId: stored?.id ?? '' } }));
     expect(held.entries.find(({ path }) => path === '/R0100/l2_m2')).toMatchObject({ shape: [40, 3], refusal: null });
     expect((await asAuthor('GET /api/v1/submissions/{id}/files/{fileId}/structure', { params: { id: draft, fileId: revision.files[0]?.id ?? '' } })).status).toBe(422);
+    const absent = await bytesOf(asAuthor('GET /api/v1/submissions/{id}/files/{fileId}/structure', { params: { id: draft, fileId: UNKNOWN } }));
+    expect(absent[0]).toBe(404);
+    for (const [who, where] of [['stranger', draft], ['referee', draft], ['author', reviewed]] as const)
+      expect(await bytesOf(ask('GET /api/v1/submissions/{id}/files/{fileId}/structure', { as: bearer(token[who]), params: { id: where, fileId: stored?.id ?? '' } })), `${who} of ${where}`).toEqual(absent);
     const long = Buffer.from('1 2\n3 4\n');
     const announced = { name: 'long.txt', bytes: long.length, sha256: createHash('sha256').update(long).digest('hex') };
     const begun = async () => (await read<{ upload: { id: string } }>(asAuthor('POST /api/v1/submissions/{id}/uploads', { json: announced }))).upload.id;
@@ -439,6 +444,21 @@ describe('every other answer fits its schema', () => {
     expect((await asAuthor('POST /api/v1/submissions/{id}/lodge')).status).toBe(202);
     expect((await asAuthor('POST /api/v1/submissions/{id}/withdraw', { json: { reason: 'A better one follows.' } })).status).toBe(200);
     for (const door of ['GET /api/v1/submissions/{id}', 'GET /api/v1/submissions/{id}/desk', 'GET /api/v1/submissions/{id}/threads', 'GET /api/v1/submissions/{id}/variations'] as const) expect((await asAuthor(door, { params: { id: reviewed } })).status, door).toBe(200);
+  });
+
+  it('and a file that cannot be read is told by its own name, whoever else has the same bytes', async () => {
+    const other = await draftWithBursts(stranger.actor);
+    const broken = readFileSync('tests/unit/formats/fixtures/layouts.h5').subarray(0, 30_000);
+    const troubleOf = async (who: 'author' | 'stranger', id: string, name: string): Promise<readonly string[]> => {
+      const form = new FormData();
+      form.append('file', new Blob([broken]), name);
+      const as = bearer(token[who]);
+      const [stored] = await read<{ id: string }[]>(ask('POST /api/v1/submissions/{id}/files', { as, params: { id }, raw: form }));
+      return (await read<StructureView>(ask('GET /api/v1/submissions/{id}/files/{fileId}/structure', { as, params: { id, fileId: stored?.id ?? '' } }))).trouble;
+    };
+    const mine = await draftWithBursts(author.actor);
+    expect(await troubleOf('author', mine, 'mine.h5')).toEqual([expect.stringMatching(/^mine\.h5: saw a file that ends before/)]);
+    expect(await troubleOf('stranger', other, 'other.h5')).toEqual([expect.stringMatching(/^other\.h5: saw a file that ends before/)]);
   });
 
   it('for everybody', async () => {
