@@ -238,7 +238,9 @@ export function findLag(c: CrossSpectrum, objective: Objective, stride: number):
   let grid = coarseGrid(c, core, objective, step);
   let hills = candidatesOf(grid, share);
   const top = grid[hills[0]!]!;
-  const isIncoherent = (objective === 'real' ? top : Math.sqrt(Math.max(0, top))) * step < COHERENT * core.total;
+  // The inverse transform divides by its size.
+  const height = (objective === 'real' ? top : Math.sqrt(Math.max(0, top))) * grid.length * step;
+  const isIncoherent = height < COHERENT * core.total;
   if (isIncoherent || hills.length > MOST_CANDIDATES) {
     step = 1;
     grid = coarseGrid(c, { from: 0, to: c.n }, objective, step, FINER);
