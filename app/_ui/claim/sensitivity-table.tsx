@@ -33,6 +33,9 @@ function summary(rows: readonly ResultSensitivity[]): string {
   return `By a tolerance T or more: ${heavy.join(', ')}.`;
 }
 
+/** Four digits say where a setting was put; the table of settings has them all. */
+const brief = (value: unknown): unknown => (typeof value === 'number' && !Number.isInteger(value) ? Number(value.toPrecision(4)) : value);
+
 /** Each setting put elsewhere alone, by route A at the worst point: what the number would be. */
 export function SensitivityTable({ claim }: { readonly claim: ResultClaim }) {
   const rows = claim.sensitivities ?? [];
@@ -44,9 +47,9 @@ export function SensitivityTable({ claim }: { readonly claim: ResultClaim }) {
         <tbody>
           {rows.map((row, i) => (
             <tr key={i}>
-              <th scope="row" className="font-normal!">{settingLabel(row.setting)} <SettingStanding standing={row.standing} /></th>
-              <td>{formatSetting(row.setting, row.used, row.unit)}</td>
-              <td>{formatSetting(row.setting, row.tried, row.unit)}</td>
+              <th scope="row" className="font-normal!">{settingLabel(row.setting)}<span className="block text-small"><SettingStanding standing={row.standing} /></span></th>
+              <td>{formatSetting(row.setting, brief(row.used), row.unit)}</td>
+              <td>{formatSetting(row.setting, brief(row.tried), row.unit)}</td>
               <Moved row={row} claim={claim} />
             </tr>
           ))}

@@ -2,7 +2,7 @@ import { waveformsIn, type DetectorTraits, type PointRequest } from '@/lib/engin
 import { massFrameOf } from '@/lib/engine/conditioning/detector-settings';
 import type { BudgetLine } from '@/lib/engine/contract/measurement';
 import type { DeclaredSettings } from '@/lib/engine/contract/settings';
-import { short } from '@/lib/engine/findings/detector-findings';
+import { short } from '@/lib/engine/findings/spelt';
 import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Evaluated, Recipe, RouteKit } from '@/lib/engine/quantities/detector/recipe';
@@ -10,9 +10,12 @@ import { houseCosmology } from '@/lib/engine/units/cosmology';
 import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { halfUnit } from './half-unit';
+import { withUnit } from './numeral';
 import { isPrinted, kitOf, standardOf, type ComputationError } from './error-bar';
 
 export interface BudgetContext {
+  /** Of the value, for the notes; empty without one. */
+  readonly unit: string;
   readonly recipe: Recipe;
   readonly kit: RouteKit;
   readonly request: PointRequest;
@@ -79,7 +82,7 @@ function taperLine(context: BudgetContext): BudgetLine {
   const tapers: readonly (number | 'none')[] = [length / 2, 2 * length, declared.taper === 'none' ? length : 'none'];
   const moves = tapers.map((taper) => movedBy(context, withSettings(context, { taper })));
   const moved = largest(moves);
-  const note = `Ramps of half and twice the length and ${declared.taper === 'none' ? 'the house taper' : 'none'}: ${moves.map((x) => short(x, 2)).join(', ')}; half-width over √3.`;
+  const note = `Ramps of half and twice the length and ${declared.taper === 'none' ? 'the house taper' : 'none'}: ${moves.map((x) => withUnit(x, context.unit)).join(', ')}; half-width over √3.`;
   return { ...base, u: moved === null ? null : standardOf(moved), note };
 }
 
@@ -127,7 +130,7 @@ function noiseLine(context: BudgetContext): BudgetLine {
   return {
     ...base,
     u: moved === null ? null : standardOf(moved),
-    note: `S linear in f between points, and every second of ${noise.points.length} points left out: ${moves.map((x) => short(x, 2)).join(', ')}; half-width over √3.`,
+    note: `S linear in f between points, and every second of ${noise.points.length} points left out: ${moves.map((x) => withUnit(x, context.unit)).join(', ')}; half-width over √3.`,
   };
 }
 
@@ -167,7 +170,7 @@ function modesLine(context: BudgetContext): BudgetLine[] {
     {
       ...base,
       u: standardOf(rest),
-      note: `ℓ = ${top} moves the value by ${short(one!, 2)}, ${short(100 * ratio, 2)} % of ℓ = ${top - 1}; the rest of that series, one-sided, over √3.`,
+      note: `ℓ = ${top} moves the value by ${withUnit(one!, context.unit)}, ${short(100 * ratio, 2)} % of ℓ = ${top - 1}; the rest of that series, one-sided, over √3.`,
     },
   ];
 }

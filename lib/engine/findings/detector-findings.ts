@@ -11,9 +11,8 @@ import type { Finding, FindingLevel } from '@/lib/engine/contract/finding';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Side } from '@/lib/engine/contract/route';
 import { lateDecay } from './late-decay';
+import { short } from './spelt';
 
-/** Three significant digits, without trailing noise. */
-export const short = (x: number, digits = 3): string => String(Number(x.toPrecision(digits)));
 
 /** The mass that names a point, where it has one. */
 const massOf = (point: DetectorPoint): string | null => (point.massMsun === null ? null : `${short(point.massMsun, 6)} M☉`);

@@ -1,7 +1,8 @@
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import type { DetectorPoint } from '@/lib/engine/conditioning/detector-settings';
 import type { Finding } from '@/lib/engine/contract/finding';
-import { short, startFrequency } from './detector-findings';
+import { startFrequency } from './detector-findings';
+import { short } from './spelt';
 
 /**
  * Where a hybrid takes the numerical amplitude before the taper has let it in.

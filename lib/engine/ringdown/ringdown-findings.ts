@@ -1,5 +1,6 @@
 import type { Finding } from '../contract/finding';
-import { short, toneSampling } from '../tones/tone-findings';
+import { short } from '../findings/spelt';
+import { toneSampling } from '../tones/tone-findings';
 import { toneName } from '../tones/tone';
 import { lineOnSamples, type RingdownLine } from './line-on-samples';
 import type { FitWindow, RingdownPoint } from './ringdown-point';

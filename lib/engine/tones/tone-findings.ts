@@ -1,9 +1,9 @@
 import type { Finding } from '../contract/finding';
 import type { RadiationRecord } from '../radiation/radiation-record';
 import { coarsestSampling } from '../radiation/sampling';
+import { short } from '../findings/spelt';
 import { toneName, type Tone } from './tone';
 
-export const short = (x: number, digits = 3): string => String(Number(x.toPrecision(digits)));
 
 const FEW = 12;
 const TOO_FEW = 4;

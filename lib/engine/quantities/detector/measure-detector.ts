@@ -19,6 +19,8 @@ import { settingsByPoint, usedSettings, type SettingsContext } from './used-sett
 /** What a quantity of one detector is, beside its recipe. */
 export interface DetectorQuantity {
   readonly id: string;
+  /** Printed after the value; empty without one. */
+  readonly unit: string;
   readonly settings: readonly SettingName[];
   readonly recipe: Recipe;
   readonly naturalTolerance: Quantity['naturalTolerance'];
@@ -136,6 +138,7 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
   step(watch, 0.9, 'error budget');
   const shown = requests.map((r, i) => recipe.shownPoint(r, found[i]!));
   const budget = detectorBudget({
+    unit: quantity.unit,
     recipe,
     kit: walk.kitA,
     request: requests[worst]!,

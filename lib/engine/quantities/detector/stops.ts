@@ -4,6 +4,7 @@ import type { Finding } from '@/lib/engine/contract/finding';
 import type { MeasureRequest } from '@/lib/engine/contract/quantity';
 import type { Side } from '@/lib/engine/contract/route';
 import * as look from '@/lib/engine/findings/detector-findings';
+import { short } from '@/lib/engine/findings/spelt';
 import { recordFindings } from '@/lib/engine/findings/record-findings';
 import { evenLines, MOST_EVEN_LINES } from '@/lib/engine/routes/a/bin-plan';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
@@ -86,7 +87,7 @@ function apartStop(point: DetectorPoint): Finding | null {
   }));
   const gap = Math.max(to!.start - from!.end, from!.start - to!.end);
   if (!(gap > MOST_LENGTHS_APART * (from!.end - from!.start + to!.end - to!.start))) return null;
-  const text = `${a.waveform.name} ends at ${look.short(from!.end)} s and ${b.waveform.name} starts at ${look.short(to!.start)} s, as the files time them (the other way round, ${look.short(from!.start)} and ${look.short(to!.end)} s): they share no time.`;
+  const text = `${a.waveform.name} ends at ${short(from!.end)} s and ${b.waveform.name} starts at ${short(to!.start)} s, as the files time them (the other way round, ${short(from!.start)} and ${short(to!.end)} s): they share no time.`;
   return stop('engine/records-far-apart', b.waveform.name, text, 'Shift one of the files, or claim a match, which moves b in time.');
 }
 
@@ -96,7 +97,7 @@ function tooManyLines({ a, b, band, maximise }: DetectorPoint, needsPair: boolea
   const lines = evenLines({ sides: [a, b], band, absoluteTimes: !maximise.includes('time') }, store);
   if (!(lines > MOST_EVEN_LINES)) return null;
   const file = (a.waveform.domain === 'frequency' ? a : b).waveform.name;
-  const text = `Between ${look.short(band.fLowHz, 6)} and ${look.short(band.fHighHz, 6)} Hz the product of ${a.waveform.name} and ${b.waveform.name} would need ${look.short(lines)} evenly spaced frequencies; at most ${MOST_EVEN_LINES} are held.`;
+  const text = `Between ${short(band.fLowHz, 6)} and ${short(band.fHighHz, 6)} Hz the product of ${a.waveform.name} and ${b.waveform.name} would need ${short(lines)} evenly spaced frequencies; at most ${MOST_EVEN_LINES} are held.`;
   return stop('engine/too-many-lines', file, text, 'Raise fLowHz or lower fHighHz, or attach the waveform as a time series.');
 }
 
@@ -138,7 +139,7 @@ function pointStops(quantity: DetectorQuantity, request: PointRequest, store: Sp
       ? null
       : look.noSignal(
           request.a.given.name,
-          `between ${look.short(band.fLowHz, 6)} and ${look.short(band.fHighHz, 6)} Hz: its samples carry nothing above the lower edge`,
+          `between ${short(band.fLowHz, 6)} and ${short(band.fHighHz, 6)} Hz: its samples carry nothing above the lower edge`,
         );
   const found = [
     ...waveformStops(request, point),
@@ -183,7 +184,7 @@ export function valueStops(_quantity: DetectorQuantity, walk: Walk, found: reado
     return [
       look.noSignal(
         request.a.given.name,
-        `between ${look.short(point.band.fLowHz, 6)} and ${look.short(point.band.fHighHz, 6)} Hz${request.b ? `, or ${request.b.given.name} has none` : ''}, or the value is not finite`,
+        `between ${short(point.band.fLowHz, 6)} and ${short(point.band.fHighHz, 6)} Hz${request.b ? `, or ${request.b.given.name} has none` : ''}, or the value is not finite`,
       ),
     ];
   });
