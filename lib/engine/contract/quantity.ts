@@ -3,6 +3,7 @@ import type { Measurement } from './measurement';
 import type { NoiseCurve } from './noise-curve';
 import type { DeclaredSettings, SettingName } from './settings';
 import type { Variable, Waveform } from './waveform';
+import type { Workshop } from './workshop';
 
 /** A part that one waveform plays in a claim. */
 export type SingleRole = 'a' | 'b' | 'em' | 'gw';
@@ -30,6 +31,8 @@ export interface MeasureRequest {
   readonly withFigures: boolean;
   /** A first look: route A alone, no error bar and no budget; nothing may be concluded from it. */
   readonly routeAOnly?: boolean;
+  /** Spectra kept for the next measurement of the same waveforms; only for first looks, so that no result hangs on what was computed before. */
+  readonly workshop?: Workshop;
 }
 
 /** How a long measurement tells what it does and is told to stop; pure, injected. */

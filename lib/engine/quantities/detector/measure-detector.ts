@@ -104,7 +104,7 @@ export function measureDetector(quantity: DetectorQuantity, request: MeasureRequ
   if (firstOf(request) === undefined || request.inputs.noise === null) return notComputable([], ats);
   step(watch, 0, 'preparing the waveforms');
   const requests = requestsOf(quantity, request);
-  const store = new SpectrumStore();
+  const store = storeOf(request);
   const stops = stopsOf(quantity, request, requests, store);
   if (stops.length > 0) return notComputable([...stops, ...findingsOf(quantity, requests, null)], ats);
   const walk: Walk = { quantity, request, requests, store, kitA: kitOf(houseNumerics, store) };
@@ -115,6 +115,9 @@ export function measureDetector(quantity: DetectorQuantity, request: MeasureRequ
   if (late.length > 0) return notComputable([...late, ...findingsOf(quantity, requests, found)], ats);
   return request.routeAOnly ? lookedAt(walk, found) : weighed(walk, found, watch);
 }
+
+const storeOf = ({ routeAOnly, workshop }: MeasureRequest): SpectrumStore =>
+  routeAOnly && workshop !== undefined ? workshop.once('route-a', () => new SpectrumStore()) : new SpectrumStore();
 
 /** Route A's values alone: what was not estimated is null. */
 function lookedAt({ quantity, requests }: Walk, found: readonly Evaluated[]): Measurement {

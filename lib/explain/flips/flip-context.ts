@@ -1,0 +1,74 @@
+import type { Claim } from '@/lib/claims/claim';
+import type { UsedSetting } from '@/lib/engine/contract/measurement';
+import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
+import type { SettingName } from '@/lib/engine/contract/settings';
+import type { Waveform } from '@/lib/engine/contract/waveform';
+
+/** Words that came with the sheet: its statement, comments in the heads of files. */
+export interface Written {
+  /** The file, or `statement`. */
+  readonly where: string;
+  readonly text: string;
+}
+
+/** The noise of the claim as declared. */
+export interface NoiseFacts {
+  readonly curve: NoiseCurve;
+  /** Null for a built-in curve. */
+  readonly column: 'asd' | 'psd' | 'characteristic' | null;
+  readonly sided: 'one' | 'two';
+}
+
+/** A claim of the same sheet and quantity whose number is a reference for another's. */
+export interface SiblingPoint {
+  readonly claimId: string;
+  readonly value: number;
+  readonly fieldGauss: number | null;
+  readonly totalMassMsun: number | null;
+}
+
+/** Everything that decides how one claim could be read otherwise. */
+export interface FlipContext {
+  readonly claim: Claim;
+  /** Settings in force, by name. */
+  readonly used: ReadonlyMap<string, UsedSetting>;
+  readonly points: readonly { readonly at: Readonly<Record<string, number>>; readonly value: number | null }[];
+  readonly waveforms: readonly Waveform[];
+  readonly noise: NoiseFacts | null;
+  /** Published curves with their range. */
+  readonly curves: readonly { readonly id: string; readonly fLowHz: number; readonly fHighHz: number }[];
+  readonly texts: readonly Written[];
+  readonly siblings: readonly SiblingPoint[];
+  /** Redshift at a luminosity distance, for the cosmology in force. */
+  readonly redshiftAt: (distanceMpc: number) => number;
+}
+
+export const isSwept = ({ claim }: FlipContext, name: SettingName): boolean => claim.over?.setting === name;
+
+/** May this quantity be asked with that setting? */
+export const takes = ({ claim }: FlipContext, name: SettingName): boolean => claim.quantity.settings.includes(name);
+
+/** The one number in force for all points; null where it is swept, hangs on the point, or is no number. */
+export function numberInForce(context: FlipContext, name: SettingName): number | null {
+  if (isSwept(context, name)) return null;
+  const value = context.used.get(name)?.value ?? context.claim.settings[name];
+  return typeof value === 'number' && Number.isFinite(value) ? value : null;
+}
+
+export const inForce = ({ claim, used }: FlipContext, name: SettingName): unknown => used.get(name)?.value ?? claim.settings[name];
+
+/** Nobody declared it, or nobody could: reading it otherwise contradicts no one. */
+export const isAssumed = ({ claim, used }: FlipContext, name: SettingName): boolean =>
+  claim.over?.setting !== name && claim.settings[name] === undefined && used.get(name)?.standing !== 'declared';
+
+/** The value of a setting at each point, swept or not; null where it is no number. */
+export const atPoints = (context: FlipContext, name: SettingName): (number | null)[] =>
+  context.points.map(({ at }) => at[name] ?? numberInForce(context, name));
+
+/** The redshift of the source as far as the claim tells it. */
+export function redshiftOf(context: FlipContext): number | null {
+  const declared = numberInForce(context, 'redshift') ?? context.claim.settings.redshift ?? null;
+  if (declared !== null) return declared;
+  const distance = numberInForce(context, 'distanceMpc') ?? context.waveforms[0]?.ownDistanceMpc ?? null;
+  return distance === null ? null : context.redshiftAt(distance);
+}
