@@ -1,10 +1,8 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine } from '../contract/measurement';
 import { pairOnSamples, housePair } from './pair-on-samples';
 import { pairBy, type PairPoint, type PairResult, type Which } from './pair-point';
 
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 /** E15: each edge of the window moved by a fifth of its length. */
 const MOVED = [-0.2, 0, 0.2];
 

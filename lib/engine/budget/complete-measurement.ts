@@ -4,6 +4,7 @@ import type { DeclaredSettings } from '../contract/settings';
 import { mismatch } from '../quantities/mismatch';
 import { overlap } from '../quantities/overlap';
 import { worstIndex } from './chosen-points';
+import { standardOf } from './half-width';
 import { isMatchLike, metricBound, type BoundFound } from './metric-bound';
 import { numeral, withUnit } from './numeral';
 import { simulationLine, unavailable, waveformsOf, type Kind } from './relatives';
@@ -26,7 +27,7 @@ function boundLine(kind: Kind, found: BoundFound, unit: string): BudgetLine {
   const alone = found.alone[kind];
   if (alone === null) return unavailable(kind, found.bound.missing.filter((what) => what.startsWith(kind)).map((what) => `no other ${what}`).join(', '));
   const { interval, knownTo } = alone;
-  const u = (interval.high - interval.low) / (2 * Math.sqrt(3));
+  const u = standardOf((interval.high - interval.low) / 2);
   const known = knownTo.map(({ waveform, relative, mismatch: by }) => `${waveform} and ${relative} differ by a mismatch of ${numeral(by)}`).join(', ');
   const between = `the number lies between ${numeral(interval.low, 5)} and ${Number.isFinite(interval.high) ? withUnit(interval.high, unit, 5) : 'no upper bound'}`;
   return { ...unavailable(kind), u: Number.isFinite(u) ? u : null, shape: 'rectangular', note: `${known}: ${between}. A bound, not a standard uncertainty; its width over 2√3.` };

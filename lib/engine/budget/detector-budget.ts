@@ -11,7 +11,8 @@ import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { halfUnit } from './half-unit';
 import { withUnit } from './numeral';
-import { isPrinted, kitOf, standardOf, type ComputationError } from './error-bar';
+import { isPrinted, kitOf, type ComputationError } from './error-bar';
+import { standardOf } from './half-width';
 
 export interface BudgetContext {
   /** Of the value, for the notes; empty without one. */

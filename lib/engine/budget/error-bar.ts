@@ -9,6 +9,7 @@ import type { Evaluated, Recipe, RouteKit } from '@/lib/engine/quantities/detect
 import { createRouteA } from '@/lib/engine/routes/a/route-a';
 import { houseNumerics, type Numerics } from '@/lib/engine/routes/a/numerics';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
+import { standardOf } from './half-width';
 import { withFewerDigits } from './reduce-digits';
 import { expandedOf } from './total';
 
@@ -48,11 +49,6 @@ export interface ComputationError {
   readonly largestKnob: string;
   readonly expanded: number;
 }
-
-const ROOT3 = Math.sqrt(3);
-
-/** Of a rectangle (JCGM 100: u = half-width/√3). */
-export const standardOf = (halfWidth: number): number => halfWidth / ROOT3;
 
 const roundedOnce = new WeakMap<Waveform, Map<number, Waveform>>();
 function fewer(waveform: Waveform, digits: number): Waveform {

@@ -1,6 +1,7 @@
 import { combine, sharedCorrelation, type Term } from './combine';
 import { fitInInverseRadius } from '../extrapolation/radius-fit';
 import { orderOfValues, richardsonValue } from '../extrapolation/richardson';
+import { standardOf } from './half-width';
 import { numeral, withUnit } from './numeral';
 
 /** A number computed from one run of a simulation. */
@@ -91,7 +92,7 @@ export function radiusError(given: readonly RunNumber[], unit: string): Simulati
   const doubt = Math.abs(atInfinity - (previousOrder ?? atInfinity));
   const size = apart < 0 ? apart - doubt : apart + doubt;
   const note = `Polynomial of degree ${degree} in 1/r over ${runs.length} radii: limit ${withUnit(atInfinity, unit, 6)}, ${withUnit(apart, unit)} away; degree ${degree - 1} differs by ${withUnit(doubt, unit)}; both added, half-width over √3.`;
-  return { u: size / Math.sqrt(3), note };
+  return { u: standardOf(size), note };
 }
 
 /** One simulation's part in a component. */

@@ -4,13 +4,12 @@ import type { DeclaredSettings } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
 import { cutBefore, unitsPerM } from './cut-start';
 import { halfUnit } from './half-unit';
+import { ROOT3 } from './half-width';
 import { waveformsOf } from './relatives';
 import { numeral, withUnit } from './numeral';
 import type { Rerun } from './rerun';
 import { togetherAs, type Part } from './simulation-error';
 import { smoothedInspiral } from './smooth-inspiral';
-
-const ROOT3 = Math.sqrt(3);
 
 export interface Varying {
   readonly quantityId: string;

@@ -1,10 +1,10 @@
+import { ROOT3 } from '../budget/half-width';
 import type { BudgetLine } from '../contract/measurement';
 import { energyOnSamples, totalEnergy } from '../radiation/energy-on-samples';
 import { sharesByEll } from '../radiation/energy-recipe';
 import { modesLine } from '../radiation/radiation-budget';
 import { emUncertainty, type EmPoint } from './em-point';
 
-const ROOT3 = Math.sqrt(3);
 /** E07: the start moved by ±50 M, as far as the record goes. */
 const START_MOVED_M = 50;
 

@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { Finding } from '../contract/finding';
 import type { DeclaredSettings } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
@@ -86,10 +87,6 @@ export const emEnergyA = ({ source, scale }: EmPoint): number => scale.factor * 
 
 /** E/M by route B. */
 export const emEnergyB = ({ source, scale }: EmPoint): number => scale.factor * source.byRouteB();
-
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 
 /** At twice the step a sum of fourth order or better errs at least so many times more than at the step itself. */
 const BY_STEP = 15;

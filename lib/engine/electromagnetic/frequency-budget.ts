@@ -1,13 +1,10 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine } from '../contract/measurement';
 import { relativeSlip } from '../radiation/input-rounding';
 import { ringdownComputation, ringdownCoverage } from '../ringdown/ringdown-budget';
 import { isFinding } from '../tones/measure-tones';
 import { frequencyByRouteA, hzPerOmega, type FrequencyPoint, type FrequencyReading } from './frequency-point';
 import { frequencyOnSamples } from './tone-frequency';
-
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 
 function slopeLines(point: FrequencyPoint, { omega, timeM }: FrequencyReading, hz: number): BudgetLine[] {
   const { tones, completed } = point.ringdown;

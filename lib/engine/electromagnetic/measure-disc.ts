@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine, Figure, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
 import { scientific } from '../findings/spelt';
@@ -9,9 +10,6 @@ import { discFindings } from './disc-findings';
 import { accretionErgPerS, coolingS, discPreparer, dynamicalS, eddingtonErgPerS, type DiscPoint } from './disc-point';
 import { pointsOf } from './measure-em-energy';
 
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 const MOST_POINTS = 1200;
 
 const ratioOf = ({ peak, totalMassMsun }: DiscPoint): number => peak.value / eddingtonErgPerS(totalMassMsun);

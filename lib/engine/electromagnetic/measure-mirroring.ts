@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Figure, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
@@ -13,9 +14,6 @@ import { mirrorPoint, mirrorWindow, peaksOnSamples, peaksOnSplines, type MirrorP
 
 type Window = MirrorWindow & { readonly peakM: number; readonly cut: boolean };
 
-const ROOT3 = Math.sqrt(3);
-/** Below this a spread is rounding. */
-const LEAST = 1e-13;
 /** E15: each edge of the window moved by a fifth of its length. */
 const MOVED = [-0.2, 0, 0.2];
 

@@ -1,3 +1,4 @@
+import { ROOT3 } from '../budget/half-width';
 import { withUnit } from '../budget/numeral';
 import { houseLimitObservable, houseValues } from '../contract/house-values';
 import type { Finding } from '../contract/finding';
@@ -13,8 +14,6 @@ import { chosenLines, otherRespectLine, propagatedLines } from './series-budget'
 import { approachFigure } from './series-figures';
 import { foundInRuns, leftOutFindings, named, radiusFindings, short, timeLabelFindings, waveformsOfRuns } from './series-findings';
 import { areNumbers, isMeter, measurementOf, meterOf, readRuns, stepper, stopped, titleOf, type Scalars } from './series-measurement';
-
-const ROOT3 = Math.sqrt(3);
 
 const fewRadii = (where: string, text: string, fix: string): Finding => ({ code: 'engine/few-radii', level: 'stops-lodging', where, text, fix });
 

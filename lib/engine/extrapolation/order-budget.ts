@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine } from '../contract/measurement';
 import { coarserCurves } from './curves-on-samples';
 import { curvesByRouteA, differencesOf, noiseOf, orderOfCurve, slipOf, type Interval, type ThreeRuns } from './curve-orders';
@@ -5,9 +6,6 @@ import { logRatioSlope } from './order-by-newton';
 import type { Spacings } from './richardson';
 import type { Curve, RunCurves } from './run-curves';
 
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 /** E15: each edge of the interval moved by a fifth of its length. */
 const MOVED = [-0.2, 0, 0.2];
 

@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, UsedSetting } from '../contract/measurement';
 import type { MeasureRequest, Quantity, Watch } from '../contract/quantity';
@@ -68,10 +69,6 @@ export function meterOfQuantity(quantity: Quantity, request: MeasureRequest, wat
 }
 
 export type PeakNumber = 'amplitude' | 'phase';
-
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 
 /** Route A with one knob turned at a time, by the id of the budget's line. */
 function turnedOf({ tones, peakTones, startM }: FollowedRun, endM: number, which: PeakNumber): Turned {

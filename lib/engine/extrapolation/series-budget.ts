@@ -1,13 +1,10 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import { unavailable } from '../budget/relatives';
 import { radiusError, truncationError } from '../budget/simulation-error';
 import type { BudgetLine } from '../contract/measurement';
 import type { Waveform } from '../contract/waveform';
 import type { Meter, RunScalar } from './run-scalar';
 import { isSamePlace, placeOf, type Apart } from './runs';
-
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
-const ROOT3 = Math.sqrt(3);
 
 /** A number made of the runs' numbers. */
 export interface Made {

@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine, Figure, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
 import { relativeSlip } from '../radiation/input-rounding';
@@ -10,9 +11,7 @@ import { floorLine, integrationLine, madeUp } from './orbit-budget';
 import { orbitPreparer, orbitRows, stretchByRouteA, stretchByRouteB, type OrbitPoint, type Stretch } from './orbit-point';
 import { advanceOnPanels, advanceOnSamples } from './phase-advance';
 
-const ROOT3 = Math.sqrt(3);
 const TURN = 2 * Math.PI;
-const LEAST = 1e-13;
 const MOST_POINTS = 1200;
 const whole = { afterStart: 0, beforePeak: 0 };
 

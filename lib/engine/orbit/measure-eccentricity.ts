@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Figure, Measurement } from '../contract/measurement';
 import type { MeasureRequest, Watch } from '../contract/quantity';
@@ -12,8 +13,6 @@ import { orbitPreparer, orbitRows, stretchByRouteA, stretchByRouteB, type OrbitP
 import { advanceOnSamples } from './phase-advance';
 import { eccentricityOf, houseRule, smoothedOnPanels, smoothedOnSamples } from './smooth-frequency';
 
-const ROOT3 = Math.sqrt(3);
-const LEAST = 1e-13;
 const MOST_POINTS = 1200;
 /** What the default window leaves out: the settling of the start and the plunge, which no fifth-degree polynomial follows. */
 const margins = { afterStart: 200, beforePeak: 200 };

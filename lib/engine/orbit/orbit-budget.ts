@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine } from '../contract/measurement';
 import { completeModes } from '../conditioning/complete-modes';
@@ -6,9 +7,6 @@ import { radiationRecord } from '../radiation/radiation-record';
 import { strainTones } from '../tones/strain-tone';
 import { toneName, type Tone } from '../tones/tone';
 import type { OrbitPoint } from './orbit-point';
-
-const ROOT3 = Math.sqrt(3);
-const LEAST = 1e-13;
 
 type Read = (tone: Tone) => number;
 

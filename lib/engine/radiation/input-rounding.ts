@@ -1,3 +1,4 @@
+import { standardOf } from '../budget/half-width';
 import { quadratureWeights } from './local-calculus';
 import { weightedSum, type ModeProduct } from './mode-products';
 import type { SampledRadiation } from './news-on-samples';
@@ -11,7 +12,7 @@ import type { RadiationRecord } from './radiation-record';
  * Fails:  never.
  * Source: JCGM 100:2008, 4.3.7.
  */
-export const relativeSlip = (digits: number): number => (0.5 * 10 ** (1 - digits)) / Math.sqrt(3);
+export const relativeSlip = (digits: number): number => standardOf(0.5 * 10 ** (1 - digits));
 
 interface Gradient {
   readonly re: Float64Array;

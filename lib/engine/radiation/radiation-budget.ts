@@ -1,3 +1,4 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import { expandedOf } from '../budget/total';
 import type { BudgetLine } from '../contract/measurement';
 import type { PreparedPoint } from './prepare-radiated';
@@ -5,13 +6,8 @@ import { house, type EllShare, type Outcome, type RadiationRecipe, type SampledS
 import { divisionsTo } from './radiation-record';
 import type { RadiationSettings } from './radiation-settings';
 
-const ROOT3 = Math.sqrt(3);
-
 /** E07: the start moved by ±50 M, as far as the record goes. */
 const START_MOVED_M = 50;
-
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 
 /** Standard uncertainties of the computation, in the quantity's unit. */
 export interface ComputationUncertainty {

@@ -1,3 +1,4 @@
+import { ROOT3 } from '../budget/half-width';
 import type { Finding } from '../contract/finding';
 import type { BudgetLine, Figure } from '../contract/measurement';
 import type { MeasureRequest } from '../contract/quantity';
@@ -21,8 +22,6 @@ import { ringdownCheck } from './ringdown-check';
 import { postNewtonianStart, roundingOfX, startX, statedStart, type Order, type StartValues } from './start-values';
 
 export type RemnantNumber = 'mass' | 'spin';
-
-const ROOT3 = Math.sqrt(3);
 
 /** What one route says of energy and angular momentum from the start on. */
 interface Radiated {

@@ -1,4 +1,5 @@
 import { routeBIndices, worstIndex } from '../budget/chosen-points';
+import { LEAST, ROOT3 } from '../budget/half-width';
 import { expandedOf } from '../budget/total';
 import type { BudgetLine, MeasuredPoint, Measurement } from '../contract/measurement';
 import { notComputable, type MeasureRequest, type Watch } from '../contract/quantity';
@@ -9,9 +10,6 @@ import { fitFindings } from './fit-findings';
 import { fitPoint, type FitPoint } from './fit-point';
 import { groups, halfRangeOf, meanOf, readFits, type FitReading } from './published-fits';
 
-const ROOT3 = Math.sqrt(3);
-/** Double precision in a sum of some tens of terms, and in a bisection to the last bit, relative to a number of the observable's usual size. */
-const LEAST = 1e-13;
 const usual: Readonly<Record<FitPoint['observable'], number>> = { mass: 1, spin: 1, 'peak-luminosity': 1e-3, recoil: 100 };
 
 function valueOf({ fit }: FitPoint, readings: readonly FitReading[]): number {

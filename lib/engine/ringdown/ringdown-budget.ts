@@ -1,12 +1,10 @@
+import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine } from '../contract/measurement';
 import { peakOnSamples } from '../tones/peak';
 import { strainTones } from '../tones/strain-tone';
 import { lineOnSamples, slopeScatter, type RingdownLine } from './line-on-samples';
 import { fitWindow, type FitWindow, type RingdownPoint } from './ringdown-point';
 
-const ROOT3 = Math.sqrt(3);
-/** Relative size below which no computation in double precision is trusted (engine design). */
-const LEAST = 1e-13;
 /** E15: each edge of the window moved by a fifth, as far as the record goes. */
 const MOVED = [0.8, 1, 1.2];
 

@@ -1,6 +1,7 @@
 import { areaBySegments } from '@/lib/engine/fraction/area-by-segments';
 import { houseMatchThreshold } from '@/lib/engine/contract/house-values';
 import type { BudgetLine } from '@/lib/engine/contract/measurement';
+import { standardOf } from '@/lib/engine/budget/half-width';
 import { numeral } from '@/lib/engine/budget/numeral';
 import type { FractionProblem } from '@/lib/engine/fraction/fraction-found';
 import { measureOf } from './fraction-sample';
@@ -39,5 +40,5 @@ export function fractionBudget({ request, found, movedIn }: OwnBudget): BudgetLi
   const others = [straight(problem), ...(samples.length >= LEAST_TO_THIN ? [thinned(problem)] : [])];
   const moves = others.map((other) => areaBySegments(other).fraction - value);
   const note = `Straight lines between the signals${moves.length > 1 ? ', and a spline through every second of them' : ''}: ${moves.map((x) => numeral(x)).join(', ')}; half-width over √3.`;
-  return [{ component: 'Curve between the signals', id: 'interpolation', group: 'coverage', u: Math.max(...moves.map(Math.abs)) / Math.sqrt(3), note }, ...startLines({ request, movedIn })];
+  return [{ component: 'Curve between the signals', id: 'interpolation', group: 'coverage', u: standardOf(Math.max(...moves.map(Math.abs))), note }, ...startLines({ request, movedIn })];
 }

@@ -8,8 +8,8 @@ import { inspiralAmplitude, type InspiralAmplitude } from '@/lib/engine/inspiral
 import { joinFigure } from './join-figure';
 import { loudness } from './loudness';
 import { ROUNDING_FLOOR, type Evaluated, type OwnBudget, type Recipe, type RouteKit } from './recipe';
+import { ROOT3 } from '../../budget/half-width';
 
-const ROOT3 = Math.sqrt(3);
 /** Half the width of the band, as a part of the join, in which the two amplitudes are compared. */
 const BESIDE = 1e-4;
 const MOVED_JOINS = [0.8, 1.2];

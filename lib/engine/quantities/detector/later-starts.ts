@@ -1,4 +1,5 @@
 import { cutBefore, unitsPerM } from '@/lib/engine/budget/cut-start';
+import { standardOf } from '@/lib/engine/budget/half-width';
 import { numeral } from '@/lib/engine/budget/numeral';
 import type { ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
 import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
@@ -45,5 +46,5 @@ export function startLines({ request, movedIn }: Pick<OwnBudget, 'request' | 'mo
   );
   if (moves.some((list) => list.length === 0)) return [{ ...base, u: null, note: `Not available: a record is too short to begin ${MOVED} M later, or has no start.` }];
   const largest = moves.map((list) => Math.max(...list.map(Math.abs)));
-  return [{ ...base, u: Math.hypot(...largest) / Math.sqrt(3), note: `All signals begun ${MOVED} M later: ${moves[0]!.map((x) => numeral(x)).join(', ')}; all templates: ${moves[1]!.map((x) => numeral(x)).join(', ')}; half-widths over √3, in quadrature.` }];
+  return [{ ...base, u: standardOf(Math.hypot(...largest)), note: `All signals begun ${MOVED} M later: ${moves[0]!.map((x) => numeral(x)).join(', ')}; all templates: ${moves[1]!.map((x) => numeral(x)).join(', ')}; half-widths over √3, in quadrature.` }];
 }
