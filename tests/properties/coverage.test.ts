@@ -18,10 +18,25 @@ const weighed = (budget: readonly BudgetLine[], claimed: Claimed): Coverage => c
 const budgets = Array.from({ length: 300 }, lines).filter((budget) => budget.length > 0);
 
 describe('whatever the budget', () => {
-  it('one line that is not known makes coverage unknown and names it, however large the stated uncertainty', () => {
+  it('one line that is not known is named, and makes coverage unknown however large the stated uncertainty', () => {
     for (const budget of budgets) {
       const withHole = [...budget.slice(1), { ...budget[0]!, component: 'the hole', u: random() < 0.5 ? null : Number.NaN }];
       expect(weighed(withHole, stating(1e6))).toEqual({ state: 'unknown', missing: ['the hole'] });
+    }
+  });
+
+  it('what is understated by the known lines alone stays so with any size of the unknown one, by no smaller factor', () => {
+    for (const budget of budgets) {
+      const hole: BudgetLine = { ...budget[0]!, component: 'the hole', u: null };
+      const least = weighed([...budget, hole], stating(0.7 * totalOf(10, budget, open).u!));
+      expect(least).toMatchObject({ state: 'understated', missing: ['the hole'] });
+      expect(weighed([...budget, hole], stating(0.9 * totalOf(10, budget, open).u!)).state).toBe('unknown');
+      for (const power of [-8, -2, 1]) {
+        const { degreesOfFreedom: _, ...filled } = { ...hole, u: 10 ** power };
+        const whole = weighed([...budget, filled], stating(0.7 * totalOf(10, budget, open).u!));
+        expect(whole.state).toBe('understated');
+        expect(whole.factor!).toBeGreaterThanOrEqual(least.factor! * 0.995);
+      }
     }
   });
 
@@ -84,7 +99,7 @@ describe('near a physical bound', () => {
   it('decides a bound that k·u alone would not', () => {
     const below: Claimed = { kind: 'above', bound: 0, printed: '> 0' };
     expect(coverageOf(below, 1e-4, budget, total).state).toBe('covered');
-    expect(coverageOf(below, 1e-4, budget, { expanded: total.expanded }).state).toBe('understated');
+    expect(coverageOf(below, 1e-4, budget, { u: total.u, expanded: total.expanded }).state).toBe('understated');
   });
 
   it('is drawn from the shape that a line gives, so that a bound reaches no further than it is wide', () => {

@@ -4,13 +4,12 @@ import { formatNumber } from '../math/format-number';
 /** Does the stated uncertainty cover what the data allow? A statement of its own, beside the verdict. */
 export function coverageText(coverage: Coverage, full = false): { readonly word: string; readonly because: string | null } {
   if (coverage.state === 'covered') return { word: 'Covered', because: null };
-  if (coverage.state === 'understated') {
-    const times = coverage.factor === undefined ? '' : ` × ${formatNumber(coverage.factor, { significant: 2 })}`;
-    return { word: `Understated${times}`, because: null };
-  }
   const missing = coverage.missing ?? [];
-  const because = full || missing.length === 1 ? `missing: ${missing.join(', ')}` : `${missing.length} components are missing`;
-  return { word: 'Unknown', because: missing.length === 0 ? null : because };
+  const named = full || missing.length === 1 ? `missing: ${missing.join(', ')}` : `${missing.length} components are missing`;
+  const because = missing.length === 0 ? null : named;
+  if (coverage.state === 'unknown') return { word: 'Unknown', because };
+  const times = coverage.factor === undefined ? '' : ` × ${formatNumber(coverage.factor, { significant: 2 })}${because === null ? '' : ' or more'}`;
+  return { word: `Understated${times}`, because };
 }
 
 /** In the table's cell the missing parts are counted; `full` names them all. */

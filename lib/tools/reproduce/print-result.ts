@@ -40,7 +40,10 @@ function columns(rows: readonly (readonly string[])[]): string[] {
 
 function coverageWords({ coverage }: ResultClaim): string {
   if (coverage.state === 'unknown') return `unknown (not available: ${coverage.missing?.join(', ') ?? 'the budget'})`;
-  return coverage.state === 'covered' ? 'covered' : `understated${coverage.factor === undefined ? '' : ` (×${coverage.factor})`}`;
+  if (coverage.state === 'covered') return 'covered';
+  const isLeast = coverage.missing !== undefined;
+  const because = [...(coverage.factor === undefined ? [] : [`${isLeast ? 'at least ' : ''}×${coverage.factor}`]), ...(isLeast ? [`not available: ${coverage.missing.join(', ')}`] : [])];
+  return because.length === 0 ? 'understated' : `understated (${because.join('; ')})`;
 }
 
 function assumedWords(claim: ResultClaim): string {

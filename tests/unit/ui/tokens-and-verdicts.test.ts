@@ -83,6 +83,7 @@ describe('coverage and budget', () => {
     expect(coverageText({ state: 'unknown', missing: ['a', 'b'] }).because).toBe('2 components are missing');
     expect(coverageText({ state: 'unknown', missing: ['a', 'b'] }, true).because).toBe('missing: a, b');
     expect(coverageText({ state: 'understated', factor: 4.12 }).word).toBe('Understated × 4.1');
+    expect(coverageText({ state: 'understated', factor: 2.98, missing: ['radius'] })).toEqual({ word: 'Understated × 3.0 or more', because: 'missing: radius' });
   });
   it('shares the variance within a group, and leaves the unknown out of it', () => {
     const line = (id: string, u: number | null) => ({ component: id, id, group: 'computation' as const, u, note: '' });

@@ -17,9 +17,21 @@ const remarksOf = (points: readonly WeighedPoint[], budget: readonly BudgetLine[
 const line = (component: string, u: number | null): BudgetLine => ({ component, id: 'E00', group: 'coverage', u, note: '' });
 
 describe('coverage', () => {
-  it('is unknown, naming what is missing, as soon as one component is', () => {
+  it('is unknown, naming what is missing, where what is known could be covered', () => {
     expect(coverageOf(claimed('0.998(1)'), 0.998, [line('quadrature', 1e-9), line('resolution', null), line('radius', null)])).toEqual({ state: 'unknown', missing: ['resolution', 'radius'] });
     expect(coverageOf(claimed('0.998(1)'), 0.998, [line('resolution', Number.NaN)])).toEqual({ state: 'unknown', missing: ['resolution'] });
+  });
+
+  it('is understated all the same where a stated uncertainty or a bound fails by the known lines alone, by k = 2', () => {
+    const known: BudgetLine = { ...line('resolution', 0.536), degreesOfFreedom: 2 };
+    expect(coverageOf(claimed('75.39(18)'), 75.4, [known, line('radius', null)])).toEqual({ state: 'understated', factor: 2.98, missing: ['radius'] });
+    expect(coverageOf(claimed('75.39(45)'), 75.4, [known, line('radius', null)])).toEqual({ state: 'unknown', missing: ['radius'] });
+    expect(coverageOf(claimed({ above: 75 }), 75.4, [known, line('radius', null)])).toEqual({ state: 'understated', missing: ['radius'] });
+    expect(coverageOf(claimed({ above: 74 }), 75.4, [known, line('radius', null)])).toEqual({ state: 'unknown', missing: ['radius'] });
+  });
+
+  it('does not take digits for a statement that could fail while a component is missing', () => {
+    expect(coverageOf(claimed('75.39'), 75.4, [line('resolution', 0.5), line('radius', null)])).toEqual({ state: 'unknown', missing: ['radius'] });
   });
 
   it('is unknown when nothing was recomputed: an empty budget is not a perfect one', () => {
