@@ -9,7 +9,7 @@ export interface Rule {
   readonly packages: readonly string[];
 }
 
-const DOMAIN = ['engine', 'formats', 'claims', 'verdicts', 'reviews', 'badges', 'pipeline', 'policy'];
+const DOMAIN = ['engine', 'formats', 'claims', 'verdicts', 'explain', 'reviews', 'badges', 'pipeline', 'policy'];
 
 export const TABLE: Readonly<Record<string, Rule>> = {
   kernel: { values: [], packages: [] },
@@ -17,7 +17,8 @@ export const TABLE: Readonly<Record<string, Rule>> = {
   formats: { values: ['kernel'], types: ['engine'], packages: ['h5wasm', '@zip.js/zip.js', 'papaparse'] },
   claims: { values: ['kernel'], types: ['engine'], packages: ['zod'] },
   verdicts: { values: ['kernel', 'claims'], types: ['engine', 'formats'], packages: [] },
-  pipeline: { values: ['kernel', 'formats', 'engine', 'claims', 'verdicts'], packages: [] },
+  explain: { values: ['kernel', 'claims', 'verdicts'], types: ['engine', 'formats'], packages: [] },
+  pipeline: { values: ['kernel', 'formats', 'engine', 'claims', 'verdicts', 'explain'], packages: [] },
   reviews: { values: ['kernel', 'policy'], types: ['claims', 'verdicts', 'pipeline'], packages: [] },
   badges: { values: ['kernel'], types: ['claims', 'verdicts', 'pipeline', 'reviews'], packages: ['node', 'zod', 'canonicalize', 'jose'] },
   policy: { values: ['kernel'], types: DOMAIN, packages: [] },
@@ -64,4 +65,4 @@ export const KEPT: Readonly<Record<string, readonly string[]>> = {
 };
 
 /** Rooms whose result depends on their arguments alone. */
-export const PURE = ['kernel', 'engine', 'verdicts', 'reviews', 'pipeline'];
+export const PURE = ['kernel', 'engine', 'verdicts', 'explain', 'reviews', 'pipeline'];
