@@ -4,6 +4,8 @@ import type { Flip } from '../flip';
 export interface JudgedClaim {
   readonly id: string;
   readonly quantity: string;
+  /** Printed after its numbers; none for a pure number. */
+  readonly unit?: string;
   /** Does a number of this kind live by its distance from one (match-like), or by its size? Decides the law of decoys and of the unexplained. */
   readonly law: 'size' | 'distance-from-one';
   /** Scale on which T and U stand: the value itself, or its logarithm. */
