@@ -8,7 +8,7 @@ export const angleConventions: readonly Convention[] = [
     id: 'C08',
     title: 'Which polarisation is seen',
     options: [{ id: 'plus', label: 'h₊' }, { id: 'cross', label: 'h×' }, { id: 'complex', label: 'both at once' }, { id: 'response', label: 'F₊h₊ + F×h×' }],
-    effect: 'Face-on a loudness stays or grows by √2 where both are counted; a match moves by about 10⁻³.',
+    effect: `Face-on SNR stays with either polarisation and grows by √2 with both (${onLoud}); a match of one mode moves by 10⁻⁴, one of several modes by more.`,
     kinds: ['rerun'],
     commonness: 'regular',
     group: 'angle',

@@ -8,7 +8,7 @@ export const integrationConventions: readonly Convention[] = [
     id: 'C30',
     title: 'How ψ₄ is integrated',
     options: [{ id: 'floor', label: 'in frequency, with a floor ω₀' }, { id: 'drift-fit', label: 'in time, less a fitted drift' }],
-    effect: `Energy 5 % lower with a floor of 0.08/M, 28 % lower with 0.3/M (${onEnergy}).`,
+    effect: `Energy of (2,±2) 5 % lower with a floor of 0.08/M, 28 % lower with 0.3/M (${onEnergy}).`,
     kinds: ['rerun'],
     commonness: 'most',
     group: 'integration',

@@ -86,7 +86,7 @@ export const massConventions: readonly Convention[] = [
     id: 'C46',
     title: 'Divisor and sign of a recoil',
     options: [{ id: 'remnant', label: 'by the mass of the remnant' }, { id: 'M', label: 'by M' }, { id: 'away', label: 'against the momentum radiated, −P' }, { id: 'along', label: 'along it, +P' }],
-    effect: '5 % of the speed between the two masses; the other sign turns the direction round.',
+    effect: '4 to 5 % of the speed between the two masses; the other sign turns the direction round.',
     kinds: ['factor'],
     commonness: 'regular',
     group: 'mass',
