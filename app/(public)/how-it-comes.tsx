@@ -58,7 +58,7 @@ export function WhatVerifiedMeans() {
         <Perforation />
         <div><h3 className="mb-2.5">It does not say</h3><Points points={saysNot} shape="not-computable" /></div>
       </div>
-      <p className="mt-3 max-w-measure text-small text-ink-2">Whether a record counts for a publication is decided by the rules of your journal or collaboration, not by this service. Where each word is exact: <Link href="/methods">how a verdict is made</Link>, <Link href="/methods/conventions">conventions</Link>, <Link href="/methods/glossary">glossary</Link>.</p>
+      <p className="mt-3 max-w-measure text-small text-ink-2">Whether a record counts for a publication is decided by the rules of your journal or collaboration, not by this service. Where each word is exact: <Link href="/methods">how a verdict is made</Link>, <Link href="/methods/house-conventions">house conventions</Link>, <Link href="/methods/glossary">glossary</Link>.</p>
     </section>
   );
 }

@@ -29,7 +29,7 @@ export default async function Methods() {
       </section>
       <section className="mt-10" aria-labelledby="quantities-h">
         <h2 id="quantities-h">Quantities</h2>
-        <p className="mt-2 max-w-measure text-ink-2">One page each: the equation, both routes, the settings and what they change, the sources, the limits. What all of them share stands under <Link href="/methods/conventions">conventions</Link>, the built-in <Link href="/methods/noise">noise curves</Link> with their plots on a page of their own, what goes into an uncertainty under <Link href="/methods/budget">error budget</Link>, every message about the data under <Link href="/methods/findings">findings</Link>, every word in the <Link href="/methods/glossary">glossary</Link>.</p>
+        <p className="mt-2 max-w-measure text-ink-2">One page each: the equation, both routes, the settings and what they change, the sources, the limits. What all of them share stands under <Link href="/methods/house-conventions">house conventions</Link>, what else can be meant by the same words in the <Link href="/methods/conventions">catalogue of conventions</Link>, the built-in <Link href="/methods/noise">noise curves</Link> with their plots on a page of their own, what goes into an uncertainty under <Link href="/methods/budget">error budget</Link>, every message about the data under <Link href="/methods/findings">findings</Link>, every word in the <Link href="/methods/glossary">glossary</Link>.</p>
         <ul className="mt-4 grid gap-x-10 stack:grid-cols-2">
           {pages.map((page) => (
             <li key={page.id} className="py-3 shadow-[inset_0_1px_var(--hair)]">

@@ -1,6 +1,6 @@
 import { readdirSync, readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
-import { withValues } from '@/app/(public)/methods/conventions/convention-values';
+import { withValues } from '@/app/(public)/methods/house-conventions/convention-values';
 import { parseGlossary } from '@/app/(public)/methods/glossary/parse-glossary';
 import { parseMethodPage, SETTINGS_HEADING } from '@/app/(public)/methods/parse-method-page';
 import { shapeWords } from '@/app/(public)/methods/setting-shape-words';

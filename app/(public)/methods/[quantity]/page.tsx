@@ -61,6 +61,6 @@ const Section = ({ section, page, quantity }: { readonly section: MethodSection;
 const WhatItDoesNotSay = () => (
   <section aria-labelledby="not-said" className="mt-8">
     <h2 id="not-said" className="scroll-mt-6">What verified does not mean</h2>
-    <p className="mt-3 max-w-measure font-serif text-prose">That a number of this kind was recomputed says that it follows from these files and settings. It does not say that the simulation is accurate, that the source exists or that the conclusion is right. <Link href="/#means">The whole promise, with both its halves</Link>; the conventions that every number here rests on: <Link href="/methods/conventions">conventions</Link>.</p>
+    <p className="mt-3 max-w-measure font-serif text-prose">That a number of this kind was recomputed says that it follows from these files and settings. It does not say that the simulation is accurate, that the source exists or that the conclusion is right. <Link href="/#means">The whole promise, with both its halves</Link>; the conventions that every number here rests on: <Link href="/methods/house-conventions">house conventions</Link>.</p>
   </section>
 );

@@ -1,35 +1,25 @@
 import type { Metadata } from 'next';
-import { readFile } from 'node:fs/promises';
-import path from 'node:path';
-import { cache } from 'react';
-import { Prose } from '@/app/_ui/math/render-markdown';
+import Link from 'next/link';
+import { conventionGroups } from '@/lib/explain/conventions/convention';
+import { groupTitles } from '@/lib/explain/conventions/conventions';
 import { PageContents } from '../page-contents';
-import { parseMethodPage } from '../parse-method-page';
 import { Trail } from '../trail';
-import { withValues } from './convention-values';
+import { GroupTable } from './group-table';
 
-export const metadata: Metadata = { title: 'Conventions', description: 'Signs, units, constants and rules on which every recomputed number rests.' };
+export const metadata: Metadata = { title: 'Conventions', description: 'What else can be meant by the same words, what that does to a number, and how a file shows it.' };
 
-const read = cache(async () => parseMethodPage('conventions', withValues(await readFile(path.join(process.cwd(), 'content', 'conventions.md'), 'utf8'))));
-
-export default async function Conventions() {
-  const page = await read();
+export default function Conventions() {
   return (
     <div className="wrap pt-10">
       <Trail here="conventions" />
-      <div className="grid gap-x-16 gap-y-6 mid:grid-cols-[minmax(0,1fr)_240px]">
-        <article className="min-w-0">
-          <h1>{page.title}</h1>
-          <div className="mt-3"><Prose source={page.summary} /></div>
-          {page.sections.map((section) => (
-            <section key={section.id} aria-labelledby={section.id} className="mt-8">
-              <h2 id={section.id} className="scroll-mt-6">{section.heading}</h2>
-              <div className="mt-3"><Prose source={section.body} /></div>
-            </section>
-          ))}
-        </article>
-        <div className="max-mid:order-first"><PageContents entries={page.sections.map(({ id, heading }) => ({ id, label: heading }))} /></div>
+      <h1>Conventions</h1>
+      <div className="prose mt-3">
+        <p>Two groups can mean different things by the same words and get different numbers from the same files. Each row is one such convention: what can be meant, what the other meaning does to a number, how often it is met, and how a file shows it. What this house means stands under <Link href="/methods/house-conventions">house conventions</Link>; a claim that declares its settings leaves less open.</p>
+        <p>Where a claim differs, the server looks through these rows for a reading under which it would agree. A <Link href="/methods/glossary#candidate">candidate</Link> is a hint to people: a number alone cannot say what its authors meant, and several rows give the same factor. Sizes that say what they were measured on are recomputed by the tests on the closed-form signals of the demonstration; the others are the plain factor, or what is usually met.</p>
+        <p>A <b>factor</b> multiplies a number that is there; <b>another run</b> computes it again with other settings; an <b>exchange</b> reads a file or a label as something else.</p>
       </div>
+      <div className="mt-4"><PageContents entries={conventionGroups.map((group) => ({ id: group, label: groupTitles[group] }))} across /></div>
+      {conventionGroups.map((group) => <GroupTable key={group} group={group} />)}
     </div>
   );
 }

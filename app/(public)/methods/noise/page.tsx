@@ -45,7 +45,7 @@ function Curve({ curve }: { readonly curve: BuiltInCurve }) {
           <tr><th scope="row" className="w-40">Source</th><td>{source}</td></tr>
           <tr><th scope="row">How it reached us</th><td>{obtained}</td></tr>
           <tr><th scope="row">Range</th><td><Hz value={fLowHz} /> to <Hz value={fHighHz} />; {rangeNote}</td></tr>
-          <tr><th scope="row">Averages</th><td>{alreadyAveraged ? <>Averaged over the sky already: an average asked for beside it stops the claim. See <Link href="/methods/conventions">conventions</Link>.</> : 'That of one optimally placed detector; averages are settings of the claim.'}</td></tr>
+          <tr><th scope="row">Averages</th><td>{alreadyAveraged ? <>Averaged over the sky already: an average asked for beside it stops the claim. See <Link href="/methods/conventions#C15">averages</Link>.</> : 'That of one optimally placed detector; averages are settings of the claim.'}</td></tr>
         </tbody>
       </Table>
       <LinkedPlots origin={{ source: `Counterfoil, built-in noise curve ${id}`, stem: 'counterfoil-noise', claimId: id, quantity: title, place: null }}>
