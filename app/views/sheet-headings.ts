@@ -9,6 +9,7 @@ import { unitOf } from '@/lib/engine/contract/quantity';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { quantities } from '@/lib/engine/quantities/registry';
 import type { ResultClaim } from '@/lib/pipeline/result';
+import { readingsOf, unsaidOf } from './setting-readings';
 
 type Loose = Readonly<Record<string, unknown>>;
 
@@ -93,6 +94,7 @@ export function headingsOfResult(claims: readonly Omit<ResultClaim, 'candidates'
   return claims.map((claim) => {
     const quantity = quantities.get(claim.quantity) ?? null;
     const words = wordsOf(sheet.claims.find((c) => c['id'] === claim.id), sheet);
-    return headingOf(claim, quantity, quantity?.needsNoise === false ? { ...words, noiseSource: null } : words);
+    const heading = headingOf(claim, quantity, quantity?.needsNoise === false ? { ...words, noiseSource: null } : words);
+    return { ...heading, readings: readingsOf(claim.quantity, claim.settings.map(({ name }) => name)), unsaid: unsaidOf(claim.quantity) };
   });
 }

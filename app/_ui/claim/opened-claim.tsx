@@ -55,7 +55,7 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
       <OpenedRow id={ids[0] ?? claim.id}>
         <td className="c" role="cell" colSpan={4}><div className="grid gap-6">
           {slots.action && <div>{slots.action(claim.id)}</div>}
-          <Part title="Settings"><SettingTable claimId={claim.id} settings={claim.settings} /></Part>
+          <Part title="Settings"><SettingTable claimId={claim.id} settings={claim.settings} readings={heading.readings} unsaid={heading.unsaid} /></Part>
           {claim.points.length > 1 && <Part title="To print"><AllRows heading={heading} claim={claim} view={view} /></Part>}
           {heading.quote && <Part title="As the text says"><p className="max-w-[52ch] border-l-2 border-control pl-3 font-serif italic">“{heading.quote}”</p></Part>}
           {heading.formula && (

@@ -7,6 +7,7 @@ import type { Finding } from '@/lib/engine/contract/finding';
 import type { ReactNode } from 'react';
 import type { FiguresByClaim, ResultDocument, VerdictWord } from '@/lib/pipeline/result';
 import type { ProgressStep } from '../primitives/progress';
+import type { ConventionNote, SettingReadings } from './convention-words';
 
 export type RecordMode = 'draft' | 'review' | 'public';
 
@@ -58,6 +59,10 @@ export interface ClaimHeading {
   readonly waveforms?: readonly WaveformSource[];
   /** Null where the quantity needs none; absent where the sheet is out of reach. */
   readonly noiseSource?: NoiseSource | null;
+  /** What else can be meant by the settings in use; absent before a run. */
+  readonly readings?: readonly SettingReadings[];
+  /** Conventions that move this quantity and that no setting says. */
+  readonly unsaid?: readonly Pick<ConventionNote, 'id' | 'title'>[];
 }
 
 export type RunView =

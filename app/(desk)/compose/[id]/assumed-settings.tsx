@@ -1,5 +1,6 @@
 'use client';
 import { formatSetting, settingLabel } from '@/app/_ui/claim/setting-names';
+import { ConventionSentence } from '@/app/_ui/claim/setting-readings';
 import { Button } from '@/app/_ui/primitives/button';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import type { AssumedSetting } from './check-summary';
@@ -28,6 +29,7 @@ export function AssumedSettings({ assumed, fields, onFix }: AssumedProps) {
             <li key={`${a.claim} ${a.name}`} className="flex flex-wrap items-center gap-x-3 gap-y-1">
               <span>{a.claim}: {settingLabel(a.name)} {formatSetting(a.name, settingFrom(a.name, a.value), a.unit)}</span>
               <Button size="low" tone="quiet" className="ml-auto" aria-label={`Declare ${a.name} of ${a.claim} as used`} onClick={() => onFix({ words: `Declared ${a.name}`, field: `claims.${index}.settings.${a.name}`, value: a.value })}>Declare as used</Button>
+              {a.notes.length > 0 && <div className="basis-full text-small">{a.notes.map((note) => <ConventionSentence key={note.id} note={note} />)}</div>}
             </li>
           );
         })}

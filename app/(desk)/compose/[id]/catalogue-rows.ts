@@ -1,3 +1,4 @@
+import { readingsOf } from '@/app/views/setting-readings';
 import { quantities } from '@/lib/engine/quantities/registry';
 import { settingRows } from '@/lib/engine/quantities/settings-table';
 import type { QuantityRow } from './quantity-row';
@@ -11,6 +12,7 @@ export function catalogueRows(): readonly QuantityRow[] {
     roles: q.roles,
     needsNoise: q.needsNoise,
     settings: settingRows(q),
+    readings: readingsOf(q.id, q.settings),
     sweepable: q.sweepable,
     scale: q.scale,
     ...(q.follows ? { follows: q.follows } : {}),

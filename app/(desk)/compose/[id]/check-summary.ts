@@ -1,3 +1,5 @@
+import type { ConventionNote } from '@/app/_ui/claim/convention-words';
+import { notesBeside } from '@/app/views/setting-readings';
 import type { Finding } from '@/lib/engine/contract/finding';
 import { settingText } from './claim-fields';
 import type { Problem } from '@/lib/kernel/problem';
@@ -19,6 +21,8 @@ export interface AssumedSetting {
   /** In the words of the form, ready to be declared. */
   readonly value: string;
   readonly unit: string;
+  /** What else can be meant by it. */
+  readonly notes: readonly ConventionNote[];
 }
 
 /** The latest check as the panel shows it; the numbers themselves are drawn on the server. */
@@ -51,7 +55,7 @@ export function checkSummary(check: DraftView['check'], answers: readonly Findin
     problems: run.state === 'refused' ? run.problems : [],
     findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))).map((found) => ({ ...found, answer: answerTo(answers, found.finding) })),
     verdicts: claims.map(({ id, verdict }) => ({ id, verdict })),
-    assumed: claims.flatMap((c) => c.settings.filter((s) => s.standing === 'assumed' && s.value !== null).map((s) => ({ claim: c.id, name: s.name, value: settingText(s.value), unit: s.unit ?? '' }))),
+    assumed: claims.flatMap((c) => c.settings.filter((s) => s.standing === 'assumed' && s.value !== null).map((s) => ({ claim: c.id, name: s.name, value: settingText(s.value), unit: s.unit ?? '', notes: notesBeside(c.quantity, s.name) }))),
   };
 }
 

@@ -1,4 +1,5 @@
 'use client';
+import { SettingReadingsList } from '@/app/_ui/claim/setting-readings';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
 import { settingsWith, type QuantityRow } from './quantity-row';
@@ -20,6 +21,7 @@ export function ClaimSettings({ form, index, quantity }: SettingsProps) {
   const shown = meant.filter((s) => s.name !== overSetting && (often.includes(s.name) || settings[s.name] !== undefined));
   const others = meant.filter((s) => s.name !== overSetting && !shown.includes(s));
   const stray = Object.keys(settings).filter((name) => (settings[name] ?? '') !== '' && !meant.some((s) => s.name === name));
+  const readings = quantity.readings.filter(({ setting }) => meant.some(({ name }) => name === setting));
   return (
     <div className="grid gap-3 sm:grid-cols-3 mid:grid-cols-4">
       {shown.map((s) => <SettingField key={s.name} form={form} index={index} row={s} />)}
@@ -30,6 +32,7 @@ export function ClaimSettings({ form, index, quantity }: SettingsProps) {
           {others.map((s) => <option key={s.name} value={s.name}>{s.name}</option>)}
         </SelectField>
       )}
+      <SettingReadingsList summary="What else can be meant by these settings" readings={readings} className="col-span-full" />
     </div>
   );
 }

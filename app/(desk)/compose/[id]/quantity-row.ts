@@ -1,3 +1,4 @@
+import type { SettingReadings } from '@/app/_ui/claim/convention-words';
 import type { Follows, Role } from '@/lib/engine/contract/quantity';
 import type { SettingName } from '@/lib/engine/contract/settings';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
@@ -10,6 +11,8 @@ export interface QuantityRow {
   readonly roles: readonly Role[];
   readonly needsNoise: boolean;
   readonly settings: readonly SettingRow[];
+  /** What else can be meant by them. */
+  readonly readings: readonly SettingReadings[];
   readonly sweepable: readonly SettingName[];
   readonly scale: 'absolute' | 'ln';
   readonly follows?: Follows;
