@@ -39,6 +39,20 @@ export function polarOf({ re, im }: ComplexSeries): PolarSeries {
 
 /** Below this, real and imaginary parts bend too fast for a local polynomial; amplitude and phase do not. */
 const FINE_SAMPLES_A_CYCLE = 20;
+export const MOST_TURN_SINE_SQUARED = Math.sin((2 * Math.PI) / FINE_SAMPLES_A_CYCLE) ** 2;
+
+/** Samples to look at, and the largest |h|² of the whole series, where another pass has found them. */
+export interface Look {
+  readonly from: number;
+  readonly to: number;
+  readonly top: number;
+}
+
+function largestPower({ re, im }: ComplexSeries): number {
+  let top = 0;
+  for (let i = 0; i < re.length; i++) top = Math.max(top, re[i]! * re[i]! + im[i]! * im[i]!);
+  return top;
+}
 
 /**
  * Does the phase move by less than a twentieth of a cycle from sample to sample, wherever the series is not negligible?
@@ -48,19 +62,15 @@ const FINE_SAMPLES_A_CYCLE = 20;
  * Fails:  never.
  * Source: our threshold; the angle from cross and dot product of neighbours.
  */
-export function isFinelySampled({ re, im }: ComplexSeries): boolean {
-  const n = re.length;
-  let top = 0;
-  for (let i = 0; i < n; i++) top = Math.max(top, re[i]! * re[i]! + im[i]! * im[i]!);
-  const least = 1e-6 * top;
-  const sine = Math.sin((2 * Math.PI) / FINE_SAMPLES_A_CYCLE);
-  const most = sine * sine;
-  for (let i = 1; i < n; i++) {
+export function isFinelySampled(series: ComplexSeries, look: Look = { from: 1, to: series.re.length, top: largestPower(series) }): boolean {
+  const { re, im } = series;
+  const least = 1e-6 * look.top;
+  for (let i = Math.max(1, look.from); i < look.to; i++) {
     const [a, b, c, d] = [re[i - 1]!, im[i - 1]!, re[i]!, im[i]!];
     const [p, q] = [a * a + b * b, c * c + d * d];
     if (p < least || q < least) continue;
     const cross = a * d - b * c;
-    if (a * c + b * d <= 0 || cross * cross > most * p * q) return false;
+    if (a * c + b * d <= 0 || cross * cross > MOST_TURN_SINE_SQUARED * p * q) return false;
   }
   return true;
 }

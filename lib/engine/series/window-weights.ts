@@ -41,7 +41,8 @@ function correctEnds(weights: Float64Array, grid: UniformGrid, tEnd: number, ord
 export function windowWeights(grid: UniformGrid, tEnd: number, window: TaperWindow, wantedOrder: number): Float64Array {
   const order = Math.max(1, Math.min(wantedOrder, grid.n >> 1));
   const plain = new Float64Array(grid.n);
-  for (let k = 0; k < grid.n; k++) plain[k] = taperWeightAt(window, grid.t0 + k * grid.dt);
+  if (window.start === null && window.end === null) plain.fill(1);
+  else for (let k = 0; k < grid.n; k++) plain[k] = taperWeightAt(window, grid.t0 + k * grid.dt);
   const weights = plain.slice();
   correctEnds(weights, grid, tEnd, order, plain);
   const { start, end } = window;

@@ -32,8 +32,11 @@ export function powersOf(s: Spectrum): Powers {
   const at = new Float64Array(zRe.length);
   for (let k = 0; k < at.length; k++) at[k] = zRe[k]! * zRe[k]! + zIm[k]! * zIm[k]! + yRe[k]! * yRe[k]! + yIm[k]! * yIm[k]!;
   const tails = new Float64Array(Math.ceil(at.length / TRIM_BLOCK));
-  for (let k = at.length - 1; k >= 0; k--) tails[Math.floor(k / TRIM_BLOCK)]! += at[k]!;
-  for (let i = tails.length - 2; i >= 0; i--) tails[i]! += tails[i + 1]!;
+  let above = 0;
+  for (let i = tails.length - 1; i >= 0; i--) {
+    for (let k = Math.min(at.length, (i + 1) * TRIM_BLOCK) - 1; k >= i * TRIM_BLOCK; k--) above += at[k]!;
+    tails[i] = above;
+  }
   const made = { at, tails };
   powers.set(s, made);
   return made;

@@ -37,8 +37,12 @@ export function realResponse(s: Spectrum, response: Exclude<Response, 'complex'>
   const n = s.zRe.length;
   const re = new Float64Array(n);
   const im = new Float64Array(n);
+  const { zRe, zIm, yRe, yIm } = s;
   for (let k = 0; k < n; k++) {
-    const [a, b, c, d] = [s.zRe[k]!, s.zIm[k]!, s.yRe[k]!, s.yIm[k]!];
+    const a = zRe[k]!;
+    const b = zIm[k]!;
+    const c = yRe[k]!;
+    const d = yIm[k]!;
     re[k] = 0.5 * (plus * (a + c) + cross * (d - b));
     im[k] = 0.5 * (plus * (b + d) + cross * (a - c));
   }

@@ -44,6 +44,9 @@ const sixPoint: readonly (readonly number[])[] = (() => {
   });
 })();
 
+/** The same with the nodes of one power side by side. */
+const sixPointByPower = Float64Array.from({ length: NODES * NODES }, (_, i) => sixPoint[i % NODES]![Math.floor(i / NODES)]!);
+
 interface Table {
   readonly coefficients: Float64Array;
   readonly start: number;
@@ -68,8 +71,13 @@ function buildTable(curve: NoiseCurve, step: number): Table {
 
 /** The sextic stencil starting at node `from`; near the ends its polynomial is re-expanded about the cell's own left node. */
 function shiftedCell(out: Float64Array, cell: number, value: Float64Array, from: number, shift: number): void {
-  const about = new Float64Array(NODES);
-  for (let j = 0; j < NODES; j++) for (let d = 0; d < NODES; d++) about[d]! += value[from + j]! * sixPoint[j]![d]!;
+  const about = shift === 0 ? out.subarray(NODES * cell, NODES * (cell + 1)) : new Float64Array(NODES);
+  for (let d = 0; d < NODES; d++) {
+    let sum = 0;
+    for (let j = 0; j < NODES; j++) sum += value[from + j]! * sixPointByPower[NODES * d + j]!;
+    about[d] = sum;
+  }
+  if (shift === 0) return;
   // x measured from the cell = y − shift, y measured from the stencil's third node.
   for (let d = 0; d < NODES; d++) {
     let sum = 0;
@@ -93,8 +101,9 @@ const readTable = ({ coefficients: c, start, perUnit, cells }: Table, logF: numb
 /** Halve the step until the table's own middle points agree with the formula. */
 function tableOf(curve: NoiseCurve, halvings: number): Table {
   let step = TABLE_STEP;
-  while (step > SMALLEST_STEP && worstMiddle(curve, buildTable(curve, step)) > TABLE_ERROR) step /= 2;
-  return buildTable(curve, step / 2 ** halvings);
+  let table = buildTable(curve, step);
+  while (step > SMALLEST_STEP && worstMiddle(curve, table) > TABLE_ERROR) table = buildTable(curve, (step /= 2));
+  return halvings === 0 ? table : buildTable(curve, step / 2 ** halvings);
 }
 
 function worstMiddle(curve: NoiseCurve, table: Table): number {

@@ -54,10 +54,11 @@ function zoomed(samples: Samples, weights: Float64Array, theta: number, origin: 
 /** Interleaved bins of one circular transform; the reference sample stands at index 0, so no phase has to be undone. */
 function transformed(samples: Samples, weights: Float64Array, size: number, origin: number): Float64Array {
   const data = new Float64Array(2 * size);
-  for (let k = 0; k < samples.re.length; k++) {
+  const { re, im } = samples;
+  for (let k = 0; k < re.length; k++) {
     const at = 2 * (k >= origin ? k - origin : k - origin + size);
-    data[at] = samples.re[k]! * weights[k]!;
-    if (samples.im !== null) data[at + 1] = samples.im[k]! * weights[k]!;
+    data[at] = re[k]! * weights[k]!;
+    if (im !== null) data[at + 1] = im[k]! * weights[k]!;
   }
   const out = new Float64Array(2 * size);
   transformOfSize(size).forward(out, data);
@@ -111,9 +112,12 @@ export function spectrumOf(request: SpectrumRequest): Spectrum {
   const zIm = new Float64Array(lastBin + 1);
   const yRe = new Float64Array(lastBin + 1);
   const yIm = new Float64Array(lastBin + 1);
+  // Where the bins fit they go round: `size` is a power of two.
+  const round = fits ? 2 * size - 1 : -1;
+  const zero = fits ? 0 : 2 * lastBin;
   for (let k = 0; k <= lastBin; k++) {
-    const plus = 2 * (fits ? k % size : lastBin + k);
-    const minus = 2 * (fits ? (size - k + size) % size : lastBin - k);
+    const plus = (zero + 2 * k) & round;
+    const minus = (zero - 2 * k) & round;
     zRe[k] = bins[plus]! * grid.dt;
     zIm[k] = bins[plus + 1]! * grid.dt;
     yRe[k] = bins[minus]! * grid.dt;

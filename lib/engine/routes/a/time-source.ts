@@ -2,7 +2,8 @@ import { nyquistFrequency } from '@/lib/engine/conditioning/nyquist-frequency';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
 import { interpolatePair, type UniformGrid } from '@/lib/engine/series/local-interpolation';
-import { interpolateThroughPolar, isFinelySampled, polarOf, type ComplexSeries, type PolarSeries } from '@/lib/engine/series/polar';
+import { interpolateThroughPolar, polarOf, type ComplexSeries, type PolarSeries } from '@/lib/engine/series/polar';
+import { fastestOfReal, surveyRecord } from './record-survey';
 
 /** A uniform grid on a record: every stride-th sample as it stands, or interpolated (stride null). */
 export interface SampleGrid extends UniformGrid {
@@ -34,21 +35,6 @@ function exactAxis(waveform: Waveform): Float64Array {
   const { axis, uniformStep } = waveform;
   if (uniformStep === null) return axis;
   return axis.map((_, k) => axis[0]! + k * uniformStep);
-}
-
-function fastestOf(axis: Float64Array, re: Float64Array, im: Float64Array | null): number {
-  let top = 0;
-  let slope = 0;
-  for (let i = 1; i < axis.length; i++) {
-    const dt = axis[i]! - axis[i - 1]!;
-    const x = re[i]! - re[i - 1]!;
-    const y = im === null ? 0 : im[i]! - im[i - 1]!;
-    const rate = (x * x + y * y) / (dt * dt);
-    if (rate > slope) slope = rate;
-    const size = re[i]! * re[i]! + (im === null ? 0 : im[i]! * im[i]!);
-    if (size > top) top = size;
-  }
-  return top > 0 ? Math.sqrt(slope / top) / (2 * Math.PI) : 0;
 }
 
 interface Part extends ComplexSeries {
@@ -92,11 +78,12 @@ function addTimes(target: ComplexSeries, part: ComplexSeries, y: { re: number; i
 export function timeSource(waveform: Waveform): TimeSource {
   const axis = exactAxis(waveform);
   const { parts, real, angular } = partsOf(waveform);
+  const surveys = real ? [] : parts.map((part) => surveyRecord(axis, part));
   const polar = new Map<number, PolarSeries | null>();
   const polarForm = (index: number): PolarSeries | null => {
     const known = polar.get(index);
     if (known !== undefined) return known;
-    const made = isFinelySampled(parts[index]!) ? null : polarOf(parts[index]!);
+    const made = surveys[index]!.isFine() ? null : polarOf(parts[index]!);
     polar.set(index, made);
     return made;
   };
@@ -125,7 +112,7 @@ export function timeSource(waveform: Waveform): TimeSource {
     axis,
     span: axis[axis.length - 1]! - axis[0]!,
     nyquist: nyquistFrequency(waveform),
-    fastest: Math.max(0, ...parts.map((part) => fastestOf(axis, part.re, real ? null : part.im))),
+    fastest: Math.max(0, ...(real ? parts.map((part) => fastestOfReal(axis, part.re)) : surveys.map(({ fastest }) => fastest))),
     lineOfSight,
     mode: partOn,
   };
