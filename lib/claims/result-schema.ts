@@ -66,7 +66,7 @@ const sensitivity = z.looseObject({
   because: z.string().optional(),
 });
 
-const claim = z.looseObject({
+export const resultClaimSchema = z.looseObject({
   id: z.string(),
   quantity: z.string(),
   unit: z.string(),
@@ -90,5 +90,5 @@ export const resultSchema = z.looseObject({
   engine: z.string(),
   title: z.string(),
   files: z.array(z.object({ name: z.string(), bytes: z.int(), sha256: z.string() })),
-  claims: z.array(claim).min(1),
+  claims: z.array(resultClaimSchema).min(1),
 });

@@ -13,6 +13,7 @@ const seenByEditor = without('draft');
 const seenByReferee = without('draft', 'withdrawn', 'expired');
 const discussed: States = ['in-review', 'deciding', 'back-with-author'];
 const underWay: States = ['draft', 'checking', 'lodged', 'triage', 'in-review', 'deciding', 'back-with-author', 'on-hold'];
+const answerable: States = [...EDITABLE_STATES.filter((s) => s !== 'back-with-author'), 'triage', ...discussed];
 const underReview: States = ['triage', 'in-review', 'deciding'];
 
 /**
@@ -36,16 +37,21 @@ export const SUBMISSION_ACTIONS = {
   'submission.manage-people': { author: editable },
   'submission.confirm-authorship': { author: everywhere, 'co-author': everywhere },
 
+  /** The authors' word on a reading under which a claim would agree; it changes no number. */
+  'submission.answer-candidate': { author: answerable, 'co-author': answerable },
+
+  /** Authors also on the draft they are writing; the service sees to it that nobody else can. */
   'submission.vary': {
-    author: [...discussed, 'triage', ...published], 'co-author': [...discussed, 'triage', ...published],
+    author: ['draft', ...discussed, 'triage', ...published], 'co-author': ['draft', ...discussed, 'triage', ...published],
     referee: [...underReview, ...published], editor: [...underReview, 'back-with-author', ...published], member: published,
   },
 
-  /** One's own reruns; asking for one and seeing it are open to the same people. */
-  'submission.view-variations': {
-    author: [...discussed, 'triage', ...published], 'co-author': [...discussed, 'triage', ...published],
-    referee: [...underReview, ...published], editor: [...underReview, 'back-with-author', ...published], member: published,
-  },
+  /** One's own reruns, wherever one may still see the submission. */
+  'submission.view-variations': { author: everywhere, 'co-author': everywhere, referee: seenByReferee, editor: seenByEditor, member: published },
+  /** One rerun: one's own, one attached to a comment that one may read, or one that its owner opened by its link. */
+  'submission.view-variation': { author: everywhere, 'co-author': everywhere, referee: seenByReferee, editor: seenByEditor, member: published, visitor: published },
+  /** Opens one's own rerun on a record to whoever has its link, or shuts it. */
+  'submission.share-variation': { author: published, 'co-author': published, referee: published, editor: published, member: published },
 
   /** An editor becomes the one who holds the submission. */
   'review.take': { editor: ['triage', 'in-review', 'deciding'] },

@@ -64,8 +64,11 @@ export function beyondScope(action: SubmissionAction | AccountAction, actor: Act
 }
 
 /** Reviews and records are about a lodged revision, whatever the state says. */
-const NEEDS_LODGED = /^(review\.|record\.|submission\.(view-review|view-public|view-variations|vary)$)/;
-const hasSomethingToShow = (action: SubmissionAction, facts: SubmissionFacts): boolean => facts.everLodged || !NEEDS_LODGED.test(action);
+const NEEDS_LODGED = /^(review\.|record\.|submission\.(view-review|view-public|view-variations?|share-variation|vary)$)/;
+/** Authors vary their own draft. */
+const OF_OWN_DRAFT = /^submission\.(vary|view-variations?)$/;
+const hasSomethingToShow = (action: SubmissionAction, facts: SubmissionFacts): boolean =>
+  facts.everLodged || !NEEDS_LODGED.test(action) || (facts.authorship !== null && OF_OWN_DRAFT.test(action));
 
 const isReading = (action: SubmissionAction): boolean => action.includes('.view-') || action.includes('.read-') || action === 'review.see-identities';
 

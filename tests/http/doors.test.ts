@@ -139,7 +139,8 @@ describe('somebody who is signed out', () => {
 const BODIES: Readonly<Record<string, unknown>> = {
   'PATCH /api/v1/submissions/[id]': { version: 1, title: 'x' },
   'POST /api/v1/submissions/[id]/withdraw': { reason: 'x' },
-  'POST /api/v1/submissions/[id]/variations': { claimId: 'C1', changes: { fLowHz: 20 } },
+  'POST /api/v1/submissions/[id]/variations': { claimId: 'C1', changes: { settings: { fLowHz: 20 } } },
+  'PUT /api/v1/submissions/[id]/variations/[variationId]/link': { readable: true },
   'DELETE /api/v1/submissions/[id]/files': { name: 'a.txt' },
 };
 const ACTION_INPUT: Readonly<Record<string, unknown>> = { createDraft: { title: 'x' } };

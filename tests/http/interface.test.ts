@@ -69,7 +69,7 @@ const everything = () =>
   desk.sql<Record<string, unknown>>(`select (select json_agg(s order by id) from submissions s) s, (select json_agg(r order by id) from revisions r) r, (select count(*) from audit_entries) a, (select count(*) from runs) n,
     (select count(*) from stored_files) f, (select count(*) from comments) c, (select count(*) from outbox) o, (select count(*) from idempotency_keys) k`);
 
-const VARIATION = { claimId: 'C1', changes: { fLowHz: 20 } };
+const VARIATION = { claimId: 'C1', changes: { settings: { fLowHz: 20 } } };
 const THREAD = { kind: 'question', visibility: 'authors', anchor: { claim: 'C1', at: null }, body: 'Which window?' };
 /** A body that each door would take from the right person at the right time. */
 const BODIES: Readonly<Partial<Record<DoorName, unknown>>> = {

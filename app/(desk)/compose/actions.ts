@@ -14,7 +14,6 @@ import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
 import { reviseSubmission } from '@/lib/services/submissions/revise-submission';
 import { draftChange, updateDraft } from '@/lib/services/submissions/update-draft';
 import { withdrawSubmission } from '@/lib/services/submissions/withdraw-submission';
-import { requestVariation as vary, variationInput } from '@/lib/services/variations/request-variation';
 
 const id = z.uuid({ version: 'v4' });
 const onlyId = z.strictObject({ id });
@@ -75,12 +74,6 @@ export const withdraw = defineAction({
   door: 'action compose.withdraw',
   input: z.strictObject({ id, reason: z.string().max(2000) }),
   handle: ({ actor, input }) => withdrawSubmission(actor, input.id, { reason: input.reason }),
-});
-
-export const requestVariation = defineAction({
-  door: 'action compose.requestVariation',
-  input: z.strictObject({ id, variation: variationInput }),
-  handle: ({ actor, input }) => vary(actor, input.id, input.variation),
 });
 
 export const addCoAuthor = defineAction({

@@ -40,10 +40,14 @@ export function panelsOf(figure: Figure): readonly Panel[] {
 
 /** The claimed values of a sweep are points; claimed traces of waveforms are lines. */
 export const drawnAsPoints = (figure: Figure, series: FigureSeries): boolean =>
-  figure.kind === 'sweep' && series.role === 'claimed';
+  figure.kind === 'sweep' && (series.role === 'claimed' || (series.role === 'varied' && isLonely(series)));
 
-/** Both traces run together in a waveform plot: there, and only there, the recomputed one is dashed. */
-export const drawnDashed = (figure: Figure, series: FigureSeries): boolean => series.role === 'recomputed' && figure.kind === 'waveforms';
+/** One value of a sweep makes no line. */
+const isLonely = (series: FigureSeries): boolean => series.values.filter((value) => value !== null).length < 2;
+
+/** Two traces run together in a waveform plot and under a variation: there, and only there, the recomputed one is dashed. */
+export const drawnDashed = (figure: Figure, series: FigureSeries): boolean =>
+  series.role === 'recomputed' && (figure.kind === 'waveforms' || figure.series.some(({ role }) => role === 'varied'));
 
 /** Plots of one claim move their cursors together when their horizontal axes mean the same. */
 export const cursorGroup = (claimId: string, figure: Figure): string => [claimId, figure.x.label, figure.x.unit].map(word).join('.');

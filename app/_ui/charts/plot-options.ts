@@ -12,6 +12,7 @@ export interface PlotSpec {
 const roleColour: Record<FigureSeries['role'], keyof Palette> = {
   claimed: 'trace-claimed',
   recomputed: 'trace-recomputed',
+  varied: 'ink',
   residual: 'ink-2',
   noise: 'ink-2',
   'band-low': 'trace-recomputed',

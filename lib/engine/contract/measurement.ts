@@ -47,8 +47,8 @@ export interface Figure {
 export interface FigureSeries {
   readonly label: string;
   readonly unit: string;
-  /** Claimed traces are solid orange, recomputed dashed blue; bands are drawn filled. */
-  readonly role: 'claimed' | 'recomputed' | 'residual' | 'noise' | 'band-low' | 'band-high';
+  /** Claimed traces are solid orange, recomputed dashed blue; bands are drawn filled. `varied` is drawn over them, and no run makes it. */
+  readonly role: 'claimed' | 'recomputed' | 'varied' | 'residual' | 'noise' | 'band-low' | 'band-high';
   readonly axis: 'left' | 'right';
   readonly scale: 'linear' | 'log';
   readonly values: readonly (number | null)[];

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { pageQuery, pageSchema } from '@/lib/services/paging';
+import { candidateAnswerInput, namedCandidate } from '@/lib/services/candidates/answer-candidate';
 import { figuresSchema, runSchema } from '@/lib/services/runs/run-schema';
 import { announcedFile } from '@/lib/services/files/upload-view';
 import { structureSchema } from '@/lib/services/files/structure-schema';
@@ -7,7 +8,9 @@ import { findingAnswer } from '@/lib/services/submissions/answer-finding';
 import { fileSchema, submissionLineSchema, submissionSchema, uploadSchema } from '@/lib/services/submissions/submission-schema';
 import { draftPatch } from '@/lib/services/submissions/update-draft';
 import { variationInput } from '@/lib/services/variations/request-variation';
-import { variationSchema } from '@/lib/services/variations/variation-schema';
+import { linkInput } from '@/lib/services/variations/open-by-link';
+import { variationPageSchema, variationSchema } from '@/lib/services/variations/variation-schema';
+import { VARIATION_VISIBILITIES } from '@/lib/services/variations/variation-view';
 import { operation } from '../operation';
 
 /**
@@ -53,6 +56,8 @@ export const sendPart = operation({
 export const finishUpload = operation({ door: 'POST /api/v1/submissions/{id}/uploads/{uploadId}', summary: 'All parts are there: the file takes its place in the draft.', params: uploadParam, status: 201, answer: fileSchema });
 export const letGoOfUpload = operation({ door: 'DELETE /api/v1/submissions/{id}/uploads/{uploadId}', summary: 'Lets go of an upload that was begun.', params: uploadParam, answer: nothing });
 export const answerFinding = operation({ door: 'PUT /api/v1/submissions/{id}/answers', summary: 'The authors’ word on a finding of the latest check; an empty one takes it back.', params: idParam, body: findingAnswer, answer: nothing });
+export const answerCandidate = operation({ door: 'PUT /api/v1/submissions/{id}/candidates', summary: 'The authors’ word on a candidate of a run: confirmed, not so, or cannot tell. It changes no number.', params: idParam, body: candidateAnswerInput, answer: nothing });
+export const takeOverCandidate = operation({ door: 'POST /api/v1/submissions/{id}/candidates', summary: 'Declares the settings of a confirmed candidate in the revision that is being written.', params: idParam, body: namedCandidate, answer: z.object({ version: z.int(), claims: z.array(z.string()) }) });
 export const readFile = operation({ door: 'GET /api/v1/submissions/{id}/files/{fileId}', summary: 'An uploaded file, as an attachment.', params: z.strictObject({ id: uuid, fileId: uuid }), media: 'application/octet-stream' });
 export const readFileStructure = operation({ door: 'GET /api/v1/submissions/{id}/files/{fileId}/structure', summary: 'What an uploaded .h5, .npz or .npy holds: its datasets with shape, type and attributes, none of their numbers.', params: z.strictObject({ id: uuid, fileId: uuid }), rate: { points: 60, perS: 60 }, answer: structureSchema });
 export const checkSubmission = operation({ door: 'POST /api/v1/submissions/{id}/check', summary: 'Asks for the server’s reading of a draft before it is lodged.', params: idParam, status: 202, answer: z.object({ runId: uuid }) });
@@ -65,6 +70,10 @@ export const readFigures = operation({ door: 'GET /api/v1/submissions/{id}/figur
 export const watchRuns = operation({ door: 'GET /api/v1/submissions/{id}/events', summary: 'Live progress, as server-sent events named progress, until one named end; 204 when nothing runs.', params: idParam, media: 'text/event-stream' });
 
 export const listVariations = operation({ door: 'GET /api/v1/submissions/{id}/variations', summary: 'Your reruns with other settings, and how many more you may ask for now.', params: idParam, query: page, answer: pageSchema(variationSchema).extend({ left: z.int() }) });
-export const askVariation = operation({ door: 'POST /api/v1/submissions/{id}/variations', summary: 'Asks for a rerun of one lodged claim with other settings; it changes no number of the record.', params: idParam, body: variationInput, status: 202, answer: z.object({ variationId: uuid, runId: uuid }) });
+export const askVariation = operation({ door: 'POST /api/v1/submissions/{id}/variations', summary: 'Asks for a rerun of one claim with other settings, of a lodged revision or of your own draft; it changes no official number.', params: idParam, body: variationInput, status: 202, answer: z.object({ variationId: uuid, runId: uuid }) });
 
-export const submissionOperations = [listSubmissions, createSubmission, readSubmission, editSubmission, readSheet, addFiles, removeFile, readFile, readFileStructure, beginUpload, sendPart, finishUpload, letGoOfUpload, checkSubmission, answerFinding, lodgeSubmission, withdrawSubmission, reviseSubmission, listRuns, readFigures, watchRuns, listVariations, askVariation] as const;
+const variationParam = z.strictObject({ id: uuid, variationId: uuid });
+export const readVariation = operation({ door: 'GET /api/v1/submissions/{id}/variations/{variationId}', summary: 'One variation beside the number it varies: your own, one attached to a comment that you may read, or one that its owner opened by its link.', params: variationParam, answer: variationPageSchema });
+export const openVariation = operation({ door: 'PUT /api/v1/submissions/{id}/variations/{variationId}/link', summary: 'Lets whoever has the link of your variation of a record read it, or shuts it again.', params: variationParam, body: linkInput, answer: z.object({ visibility: z.enum(VARIATION_VISIBILITIES) }) });
+
+export const submissionOperations = [listSubmissions, createSubmission, readSubmission, editSubmission, readSheet, addFiles, removeFile, readFile, readFileStructure, beginUpload, sendPart, finishUpload, letGoOfUpload, checkSubmission, answerFinding, answerCandidate, takeOverCandidate, lodgeSubmission, withdrawSubmission, reviseSubmission, listRuns, readFigures, watchRuns, listVariations, askVariation, readVariation, openVariation] as const;

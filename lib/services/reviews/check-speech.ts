@@ -25,5 +25,9 @@ export async function checkSpeech(
     return fail('invalid', 'There is no rerun of yours under this id here.', [
       { code: 'reviews/no-such-variation', where: '/variationId', saw: speech.variationId, expected: 'the id of a rerun you asked for here' },
     ]);
+  if (variation.baseKind === 'check')
+    return fail('invalid', 'This rerun is of a draft, which nobody but its authors may see. Ask for it again on the lodged revision.', [
+      { code: 'reviews/variation-of-a-draft', where: '/variationId', saw: 'a rerun of a draft', expected: 'a rerun of a lodged revision' },
+    ]);
   return ok({ body, variationId: variation.id });
 }

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { THREAD_KINDS, THREAD_STATES, THREAD_VISIBILITIES } from '@/lib/reviews/threads';
+import { changedSchema } from '@/lib/services/variations/changed-schema';
 import type { ThreadView } from './thread-view';
 
 /** `thread-view.ts` as a schema. */
@@ -20,6 +21,7 @@ export const seenVariationSchema = z
     id: z.string(),
     claim: z.string(),
     changes: z.array(z.string()),
+    changed: changedSchema,
     state: z.enum(['queued', 'running', 'finished', 'stopped']),
     points: z.array(z.object({ at, value: z.number().nullable(), expandedUncertainty: z.number().nullable(), official: z.number().nullable() })),
     unit: z.string(),

@@ -1,3 +1,4 @@
+import type { VariationChanges } from '@/db/schema/variations';
 import type { SeenTime } from '@/lib/reviews/anonymity';
 import type { AnchoredNumber, ReAnchoring } from '@/lib/reviews/anchors';
 import type { Closing, Side, ThreadKind, ThreadState, ThreadVisibility } from '@/lib/reviews/threads';
@@ -10,6 +11,7 @@ export interface VariationView {
   readonly claim: string;
   /** Only the changed settings, as sentences: `lower cut-off 30 Hz`. */
   readonly changes: readonly string[];
+  readonly changed: VariationChanges;
   readonly state: 'queued' | 'running' | 'finished' | 'stopped';
   readonly points: readonly { readonly at: Readonly<Record<string, number>>; readonly value: number | null; readonly expandedUncertainty: number | null; readonly official: number | null }[];
   readonly unit: string;

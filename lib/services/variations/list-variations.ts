@@ -1,11 +1,13 @@
-import { findRun } from '@/db/reads/runs/run';
-import { countVariations, listVariations as readVariations } from '@/db/reads/variations/variations';
+import { findRun, type RunRow } from '@/db/reads/runs/run';
+import { countVariations, listVariations as readVariations, type VariationRow } from '@/db/reads/variations/variations';
 import { ok } from '@/lib/kernel/result';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
 import { readSubmission } from '@/lib/services/act';
 import type { Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
+import { changesOf } from './changes';
 import { dailyQuota } from './request-variation';
+import { isOfDraft, visibilityOf } from './sees-variation';
 import { pageOf, type Page, type PageAsk } from '@/lib/services/paging';
 import type { VariationList, VariationView } from './variation-view';
 
@@ -24,9 +26,21 @@ export function pageVariations(actor: Actor, submissionId: string, ask: PageAsk)
     const items: VariationView[] = [];
     for (const row of page.value.items) {
       const run = await findRun(reader, row.runId);
-      if (run) items.push({ id: row.id, claimId: row.claimId, changes: row.changes, note: row.note, requestedAt: row.requestedAt.toISOString(), run: viewRun(run) });
+      if (run) items.push(viewVariation(row, run));
     }
     const quota = dailyQuota(facts, 'accountRole' in actor ? actor.accountRole : 'member');
     return ok({ items, next: page.value.next, left: Math.max(0, quota - counts.lately) });
   });
 }
+
+const viewVariation = (row: VariationRow, run: RunRow): VariationView => ({
+  id: row.id,
+  claimId: row.claimId,
+  changes: changesOf(row.changes),
+  note: row.note,
+  revision: row.revision,
+  ofDraft: isOfDraft(row),
+  visibility: visibilityOf(row),
+  requestedAt: row.requestedAt.toISOString(),
+  run: viewRun(run),
+});

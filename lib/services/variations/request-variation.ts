@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import type { Transaction } from '@/db/client';
-import { findLatestLodged, listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
+import { listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import { countVariations } from '@/db/reads/variations/variations';
 import { requestRun } from '@/db/writes/runs/request-run';
 import { recordVariation } from '@/db/writes/variations/record-variation';
@@ -12,26 +12,20 @@ import { userIdOf, type Actor } from '@/lib/policy/actor';
 import type { SubmissionFacts } from '@/lib/policy/facts';
 import type { SubmissionGrant } from '@/lib/policy/grant';
 import { actOnSubmission } from '@/lib/services/act';
-import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
+import { fail, type Outcome } from '@/lib/services/app-error';
 import { inputsDigest } from '@/lib/services/runs/inputs-digest';
 import { asDraftSheet } from '@/lib/services/submissions/draft-sheet';
 import { personalQueue } from '@/lib/services/submissions/run-draft';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
-import { varySheet } from './vary-sheet';
-
-const hertz = z.number().positive().max(1e6);
+import { changesInput } from './changes';
+import { findBase } from './find-base';
+import { readable, varySheet } from './vary-sheet';
 
 export const variationInput = z.strictObject({
   claimId: z.string().min(1).max(64),
-  changes: z
-    .strictObject({
-      fLowHz: hertz.optional(),
-      fHighHz: hertz.optional(),
-      totalMassMsun: z.number().positive().max(1e12).optional(),
-      noise: z.union([z.strictObject({ curve: z.string().min(1).max(16) }), z.strictObject({ named: z.string().min(1).max(64) })]).optional(),
-    })
-    .refine((changes) => Object.keys(changes).length > 0, 'at least one changed setting'),
+  changes: changesInput,
   note: z.string().max(2000).default(''),
+  revision: z.int().min(1).max(9999).optional().describe('Number of the revision to vary; else the newest lodged one, else your draft.'),
 });
 export type VariationInput = z.input<typeof variationInput>;
 
@@ -40,17 +34,20 @@ export const UNFINISHED_VARIATIONS = 3;
 export const dailyQuota = (facts: Pick<SubmissionFacts, 'authorship' | 'referee'>, accountRole: string): number =>
   facts.authorship || facts.referee || accountRole === 'editor' ? 60 : 10;
 
-/** Asks for a rerun of one lodged claim with other settings. Seen by the one who asks alone; it changes no number of the record. */
+/** Asks for a rerun of one claim with other settings. Seen by the one who asks alone; it changes no number of the record. */
 export function requestVariation(actor: Actor, submissionId: string, input: z.output<typeof variationInput>): Promise<Outcome<{ readonly variationId: string; readonly runId: string }>> {
   return actOnSubmission({ actor, action: 'submission.vary', submissionId }, async ({ tx, grant, facts, note }) => {
     const full = await quotaSpent(tx, actor, facts);
     if (full) return full;
-    const row = await findLatestLodged(tx, submissionId);
-    if (!row) return { ok: false, error: NOT_FOUND };
-    const sheet = varySheet(asDraftSheet(row.sheet, row), input.claimId, input.changes);
+    const base = await findBase(tx, facts, input.revision);
+    if (!base.ok) return base;
+    const { row, run } = base.value;
+    const declared = asDraftSheet(row.sheet, row);
+    const varied = varySheet(declared, input.claimId, input.changes);
+    const sheet = varied.ok ? readable(varied.value, input.changes, declared) : varied;
     if (!sheet.ok) return sheet;
     const runId = await askRun(tx, grant, row, sheet.value);
-    const variationId = await recordVariation(tx, grant, { runId, revisionId: row.id, claimId: input.claimId, changes: input.changes, note: input.note });
+    const variationId = await recordVariation(tx, grant, { runId, revisionId: row.id, baseRunId: run.id, claimId: input.claimId, changes: input.changes, note: input.note.trim() });
     note({ variationId });
     return ok({ variationId, runId });
   });

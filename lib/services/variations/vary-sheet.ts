@@ -1,5 +1,8 @@
 import type { VariationChanges } from '@/db/schema/variations';
+import { parseClaimSheet } from '@/lib/claims/parse-sheet';
+import type { Problem } from '@/lib/kernel/problem';
 import { ok } from '@/lib/kernel/result';
+import { catalogue } from '@/lib/pipeline/catalogue';
 import { fail, type Outcome } from '@/lib/services/app-error';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 
@@ -14,23 +17,41 @@ function freeName(taken: DraftSheet['noise']): string {
 }
 
 /**
- * The sheet of one claim at one point with the changes put in. Everything that is not changed stays
- * as the author declared it, defaults included.
+ * The sheet of one claim with the changes put in. Everything that is not changed stays as the author
+ * declared it, defaults included.
  */
 export function varySheet(sheet: DraftSheet, claimId: string, changes: VariationChanges): Outcome<DraftSheet> {
   const claim = sheet.claims.find((c) => c['id'] === claimId);
   if (!claim) return fail('invalid', `The sheet has no claim ${claimId}; it has ${sheet.claims.map((c) => String(c['id'])).join(', ')}.`);
   const noise = changedNoise(sheet, changes);
   if (!noise.ok) return noise;
-  const varied = atOnePoint({ ...claim, settings: withBand(record(claim['settings']), changes) }, changes);
-  return ok({ ...sheet, noise: noise.value.curves, claims: [noise.value.name === null ? varied : { ...varied, noise: noise.value.name }] });
+  const varied = withSettings(claim, changes.settings ?? {});
+  if (!varied.ok) return varied;
+  return ok({ ...sheet, noise: noise.value.curves, claims: [noise.value.name === null ? varied.value : { ...varied.value, noise: noise.value.name }] });
 }
 
-const withBand = (settings: Record<string, unknown>, { fLowHz, fHighHz }: VariationChanges): Record<string, unknown> => ({
-  ...settings,
-  ...(fLowHz !== undefined && { fLowHz }),
-  ...(fHighHz !== undefined && { fHighHz }),
-});
+/** The varied sheet, if it can be read as one; else every problem, at the place in the changes that made it or in the sheet. */
+export function readable(varied: DraftSheet, changes: VariationChanges, sheet: DraftSheet): Outcome<DraftSheet> {
+  const parsed = parseClaimSheet(varied as unknown, catalogue);
+  if (parsed.ok) return ok(varied);
+  const index = sheet.claims.findIndex((claim) => claim['id'] === varied.claims[0]?.['id']);
+  return fail('invalid', 'With these changes the claim cannot be read.', parsed.error.map((problem) => ({ ...problem, where: placeIn(problem, changes, index) })));
+}
+
+function placeIn({ where }: Problem, { settings = {} }: VariationChanges, index: number): string {
+  const name = /^\/claims\/0\/(?:settings|over)\/([^/]+)/.exec(where)?.[1];
+  if (name !== undefined && name in settings) return where.replace(/^\/claims\/0\/(?:settings|over)/, '/changes/settings');
+  return where.startsWith('/noise/varied') ? '/changes/noise' : where.replace(/^\/claims\/0/, `/claims/${index}`);
+}
+
+function withSettings(claim: Claim, changed: Readonly<Record<string, unknown>>): Outcome<Claim> {
+  const declared = record(claim['settings']);
+  const undeclared = Object.keys(changed).filter((name) => changed[name] === null && !(name in declared));
+  if (undeclared.length > 0)
+    return fail('invalid', 'Only what the claim declares can be taken away.', undeclared.map((name) => ({ code: 'variations/not-declared', where: `/changes/settings/${name}`, saw: 'null', expected: `a value: the claim declares ${Object.keys(declared).join(', ') || 'no setting'}` })));
+  const settings = Object.fromEntries(Object.entries({ ...declared, ...changed }).filter(([, value]) => value !== null));
+  return ok(atOnePoint({ ...claim, settings }));
+}
 
 function changedNoise(sheet: DraftSheet, { noise }: VariationChanges): Outcome<{ readonly curves: DraftSheet['noise']; readonly name: string | null }> {
   if (!noise) return ok({ curves: sheet.noise, name: null });
@@ -42,13 +63,18 @@ function changedNoise(sheet: DraftSheet, { noise }: VariationChanges): Outcome<{
   return ok({ curves: sheet.noise, name: noise.named });
 }
 
-/** A mass given in the variation replaces a sweep over mass; the claimed value kept is that of the nearest claimed point. */
-function atOnePoint(claim: Claim, { totalMassMsun }: VariationChanges): Claim {
-  if (totalMassMsun === undefined) return claim;
+/** The number by which a value of a sweep is told from another: itself, or the one number of a place. */
+const sweptBy = (value: unknown): number => (typeof value === 'number' ? value : Number(Object.values(record(value))[0]));
+
+/** A value given for the swept setting replaces the sweep; the claimed value kept is that of the nearest claimed point. */
+function atOnePoint(claim: Claim): Claim {
   const { over, ...rest } = claim;
-  const settings = { ...record(claim['settings']), totalMassMsun };
-  const swept = record(over)['totalMassMsun'];
-  if (!Array.isArray(swept) || !Array.isArray(claim['claimed'])) return { ...claim, settings };
-  const nearest = swept.reduce<number>((best, mass, i) => (Math.abs(Number(mass) - totalMassMsun) < Math.abs(Number(swept[best]) - totalMassMsun) ? i : best), 0);
-  return { ...rest, settings, claimed: (claim['claimed'] as unknown[])[nearest] };
+  const [swept] = Object.keys(record(over));
+  const settings = record(claim['settings']);
+  if (swept === undefined || !(swept in settings)) return claim;
+  const values = record(over)[swept];
+  if (!Array.isArray(values) || !Array.isArray(claim['claimed'])) return rest;
+  const away = (value: unknown): number => Math.abs(sweptBy(value) - sweptBy(settings[swept]));
+  const nearest = values.reduce<number>((best, value, i) => (away(value) < away(values[best]) ? i : best), 0);
+  return { ...rest, claimed: (claim['claimed'] as unknown[])[nearest] };
 }

@@ -36,7 +36,7 @@ export const spinVisible: Course = {
 async function talkAboutTheEdge(room: DemoRoom, id: string, referee: SignedInActor, author: SignedInActor): Promise<void> {
   const claim = { claim: 'C1', at: { totalMassMsun: 60 } };
   const note = 'The 20 Hz edge: does 30 Hz give the printed numbers?';
-  const { variationId, runId } = must(await requestVariation(referee, id, { claimId: 'C1', changes: { fLowHz: 30 }, note }));
+  const { variationId, runId } = must(await requestVariation(referee, id, { claimId: 'C1', changes: { settings: { fLowHz: 30 } }, note }));
   await room.compute(runId);
   const found = (await pointsOf(referee, id, variationId)).map((p) => `${numberAt(p)} at ${p.at['totalMassMsun']} solar masses`);
   const body = `The text and the sheet say $f_l=20$ Hz. I reran the claim with **30 Hz** and nothing else changed: ${found.join(', ')}. Which edge do you mean?`;

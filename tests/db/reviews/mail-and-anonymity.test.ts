@@ -142,7 +142,7 @@ describe('nothing an author or reader gets tells who referees', () => {
   it('a rerun is its asker’s alone until it is attached', async () => {
     const id = await inTriage(desk, author);
     await withReferee(id, editor, referee);
-    const asked = must(await requestVariation(referee, id, { claimId: 'C1', changes: { fLowHz: 30 }, note: 'Higher.' } as never)) as { variationId?: string; id?: string };
+    const asked = must(await requestVariation(referee, id, { claimId: 'C1', changes: { settings: { fLowHz: 30 } }, note: 'Higher.' } as never)) as { variationId?: string; id?: string };
     await desk.runAll();
     const variationId = asked.variationId ?? asked.id ?? '';
     expect(must(await getDesk(referee, id)).variations).toMatchObject([{ id: variationId, seenBy: 'you alone', changes: ['lower cut-off 30 Hz'] }]);

@@ -3,6 +3,7 @@ import { SettingReadingsList } from '@/app/_ui/claim/setting-readings';
 import { SelectField, TextField } from '@/app/_ui/primitives/control';
 import type { SettingRow } from '@/lib/engine/quantities/settings-table';
 import { settingsWith, type QuantityRow } from './quantity-row';
+import { SettingControl } from './setting-control';
 import type { ComposerForm } from './waveform-part';
 
 interface SettingsProps {
@@ -37,23 +38,6 @@ export function ClaimSettings({ form, index, quantity }: SettingsProps) {
   );
 }
 
-function rangeOf({ shape, unit }: SettingRow): string {
-  if (shape.kind === 'number' && shape.min !== undefined) return `${shape.min} to ${shape.max} ${unit}`.trim();
-  if (shape.kind === 'number' && shape.above !== undefined) return `above ${shape.above} ${unit}`.trim();
-  if (shape.kind === 'integer') return `whole number, ${shape.min} to ${shape.max}`;
-  if (shape.kind === 'modes') return 'for example [[2,2],[2,-2]]';
-  if (shape.kind === 'cosmology') return 'for example {"h0":67.4,"omegaM":0.315}';
-  if (shape.kind === 'interval') return `[from, to] ${unit}`.trim();
-  if (shape.kind === 'subset') return shape.options.join(', ');
-  if (shape.kind === 'place') return `${shape.options.join(', ')}, or for example ${shape.flags?.[0] ? `{"${shape.flags[0]}":true}` : `{"${shape.numbers[0]?.name ?? 'timeM'}":0.3}`}`;
-  return '';
-}
-
 function SettingField({ form, index, row }: { readonly form: ComposerForm; readonly index: number; readonly row: SettingRow }) {
-  const field = form.register(`claims.${index}.settings.${row.name}`);
-  const label = <><span className="font-semibold">{row.name}</span>{row.unit && <span className="font-normal text-ink-2">, {row.unit}</span>}</>;
-  const assumed = `assumed: ${row.houseDefault}`;
-  if (row.shape.kind === 'choice')
-    return <SelectField label={label} hint={row.meaning} {...field}><option value="">{assumed}</option>{row.shape.options.map((o) => <option key={String(o)}>{String(o)}</option>)}</SelectField>;
-  return <TextField label={label} placeholder={assumed} hint={[row.meaning, rangeOf(row)].filter(Boolean).join(' ')} spellCheck={false} {...field} />;
+  return <SettingControl row={row} undeclared={`assumed: ${row.houseDefault}`} {...form.register(`claims.${index}.settings.${row.name}`)} />;
 }

@@ -1,11 +1,15 @@
 import type { Metadata } from 'next';
 import { redirect } from 'next/navigation';
+import { askedVariation, type AskedVariation, type VariationQuery } from '@/app/(public)/variations/asked-variation';
+import { variationSlot } from '@/app/(public)/variations/variation-slot';
 import { ClaimTable, ClaimTableLegend } from '@/app/_ui/claim/claim-table';
 import { submissionAsView } from '@/app/views/submission-as-view';
 import { loadFor, loadMember } from '@/lib/http/page-guard';
 import { listOpenUploads } from '@/lib/services/files/finish-upload';
 import { getDraft } from '@/lib/services/submissions/get-draft';
 import type { DraftView } from '@/lib/services/submissions/submission-view';
+import { listVariations } from '@/lib/services/variations/list-variations';
+import type { VariationList } from '@/lib/services/variations/variation-view';
 import { catalogueRows } from './catalogue-rows';
 import { checkSummary } from './check-summary';
 import { Composer } from './composer';
@@ -14,32 +18,37 @@ export const metadata: Metadata = { title: 'Composer' };
 
 interface PageProps {
   readonly params: Promise<{ readonly id: string }>;
+  readonly searchParams: Promise<VariationQuery>;
 }
 
 /** Claimed beside recomputed, as referees will see it. */
-function Reading({ draft }: { readonly draft: DraftView }) {
+function Reading({ draft, variations, asked }: { readonly draft: DraftView; readonly variations: VariationList | null; readonly asked: AskedVariation | null }) {
   const view = submissionAsView(draft);
   if (view.claims.length === 0) return null;
+  // With another sheet meanwhile, the number beside would be another's.
+  const current = draft.check?.current && draft.check.run.state === 'measured' ? draft.check.run.result : null;
+  const action = variationSlot({ revision: { submissionId: draft.id, revision: draft.revision.number, sheet: draft.revision.sheet }, result: current, variations, asked });
   return (
     <section aria-labelledby="reading-h" className="mt-12">
       <h2 id="reading-h" className="mb-1">What the check reads</h2>
       <p className="mb-3 text-ui text-ink-2">{draft.check ? (draft.check.current ? 'Of what is saved now; seen by the authors alone.' : 'Of an earlier save; check again for what is saved now.') : 'Nothing has been computed yet.'}</p>
-      <ClaimTable view={view} />
+      <ClaimTable view={view} slots={{ action }} open={asked ? [asked.claimId] : []} />
       <ClaimTableLegend />
     </section>
   );
 }
 
-export default async function Compose({ params }: PageProps) {
+export default async function Compose({ params, searchParams }: PageProps) {
   const { id } = await params;
   const draft = await loadFor(`/compose/${id}`, (actor) => getDraft(actor, id));
   if (draft.revision.lodgedAt !== null) redirect(`/submissions/${id}`);
   const you = await loadMember(`/compose/${id}`);
   const uploads = await loadFor(`/compose/${id}`, (actor) => listOpenUploads(actor, id));
+  const variations = draft.may.vary ? await loadFor(`/compose/${id}`, (actor) => listVariations(actor, id)) : null;
   const { revision } = draft;
   return (
     <Composer key={revision.id} id={id} revision={revision.number} version={revision.version} sheet={revision.sheet} files={revision.files} uploads={uploads} authors={draft.authors} you={you.userId} stateWords={draft.stateWords} catalogue={catalogueRows()} check={checkSummary(draft.check, revision.answers)} beforeLodging={draft.beforeLodging}>
-      <Reading draft={draft} />
+      <Reading draft={draft} variations={variations} asked={askedVariation(await searchParams)} />
     </Composer>
   );
 }

@@ -8,8 +8,8 @@ const POLL_MS = 3000;
  * Follows a run while one is under way: by the server's events, or by looking again every few seconds
  * where a proxy swallows them. `look` reads the page anew; it is called when the run ends.
  */
-export function useProgress(submissionId: string, running: boolean, look: () => void): Pick<ProgressEvent, 'fraction' | 'doing'> | null {
-  const [now, setNow] = useState<Pick<ProgressEvent, 'fraction' | 'doing'> | null>(null);
+export function useProgress(submissionId: string, running: boolean, look: () => void): Pick<ProgressEvent, 'runId' | 'fraction' | 'doing'> | null {
+  const [now, setNow] = useState<Pick<ProgressEvent, 'runId' | 'fraction' | 'doing'> | null>(null);
   useEffect(() => {
     if (!running) return;
     let heard = Date.now();
@@ -17,7 +17,7 @@ export function useProgress(submissionId: string, running: boolean, look: () => 
     source.addEventListener('progress', (event: MessageEvent<string>) => {
       heard = Date.now();
       const said = JSON.parse(event.data) as ProgressEvent;
-      setNow({ fraction: said.fraction, doing: said.doing });
+      setNow({ runId: said.runId, fraction: said.fraction, doing: said.doing });
       if (said.state === 'finished' || said.state === 'stopped') look();
     });
     source.addEventListener('end', () => {

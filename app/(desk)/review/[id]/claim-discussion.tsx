@@ -1,4 +1,5 @@
 import type { ReactNode } from 'react';
+import { changesInWords } from '@/app/(public)/variations/variation-words';
 import { Prose } from '@/app/_ui/math/render-markdown';
 import { placeText } from '@/app/views/place-text';
 import type { ResultPoint } from '@/lib/pipeline/result';
@@ -7,7 +8,6 @@ import type { ThreadView } from '@/lib/services/reviews/thread-view';
 import type { VariationView } from '@/lib/services/variations/variation-view';
 import { NewThread } from './new-thread';
 import { ThreadCard } from './thread-card';
-import { changesInWords } from './variation-words';
 
 interface ClaimDiscussionProps {
   readonly desk: DeskView;
@@ -19,7 +19,7 @@ interface ClaimDiscussionProps {
 /** The threads of one claim, at its numbers, and the form for a new one. */
 export function ClaimDiscussion({ desk, claimId, points, variations }: ClaimDiscussionProps): ReactNode {
   const threads = desk.threads.filter((t) => t.anchor.claim === claimId);
-  const attachable = variations.filter((v) => v.run.state === 'measured').map((v) => ({ id: v.id, words: changesInWords(v.changes) }));
+  const attachable = variations.filter((v) => v.run.state === 'measured' && !v.ofDraft && v.visibility !== 'comment').map((v) => ({ id: v.id, words: changesInWords(v.changes) }));
   return (
     <section aria-label={`Threads on ${claimId}`} className="grid gap-3">
       <h4 className="text-h3">Threads <span className="text-ink-2">{threads.length}</span></h4>

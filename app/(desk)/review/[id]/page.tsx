@@ -1,4 +1,6 @@
 import type { Metadata } from 'next';
+import { askedVariation, type AskedVariation, type VariationQuery } from '@/app/(public)/variations/asked-variation';
+import { variationSlot } from '@/app/(public)/variations/variation-slot';
 import { RecordPage } from '@/app/_ui/claim/record-page';
 import type { RecordSlots } from '@/app/_ui/claim/record-view';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
@@ -17,13 +19,12 @@ import { ClaimDiscussion } from './claim-discussion';
 import { Letters } from './letters';
 import { changeAt, ThreadAnchor } from './thread-anchor';
 import { DeskPanel } from './desk-panel';
-import { VariationPanel } from './variation-panel';
 
 export const metadata: Metadata = { title: 'Review' };
 
 interface PageProps {
   readonly params: Promise<{ readonly id: string }>;
-  readonly searchParams: Promise<{ readonly revision?: string }>;
+  readonly searchParams: Promise<VariationQuery & { readonly revision?: string }>;
 }
 
 async function loadAll(actor: Actor, id: string, revision: number | undefined) {
@@ -49,14 +50,13 @@ async function loadAll(actor: Actor, id: string, revision: number | undefined) {
 
 type Loaded = Extract<Awaited<ReturnType<typeof loadAll>>, { ok: true }>['value'];
 
-function slotsFor({ lodged, desk, candidates, variations }: Loaded): RecordSlots {
+function slotsFor({ lodged, desk, candidates, variations }: Loaded, asked: AskedVariation | null): RecordSlots {
   const result = lodged.run?.state === 'measured' ? lodged.run.result : null;
   const pointsOf = (claimId: string) => result?.claims.find((c) => c.id === claimId)?.points ?? [];
-  const curves = Object.keys(lodged.revision.sheet.noise);
   return {
     anchor: (claimId, point) => <ThreadAnchor threads={desk.threads} claimId={claimId} at={pointsOf(claimId)[point]?.at ?? {}} single={pointsOf(claimId).length === 1} />,
     change: (claimId, point) => changeAt(desk.changes, claimId, pointsOf(claimId)[point]?.at ?? {}),
-    action: (claimId) => (variations && result ? <VariationPanel submissionId={lodged.id} claimId={claimId} curves={curves} unit={result.claims.find((c) => c.id === claimId)?.unit ?? ''} own={variations.variations.filter((v) => v.claimId === claimId)} left={variations.left} points={pointsOf(claimId)} /> : null),
+    action: variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result, variations, asked }),
     discussion: (claimId) => <ClaimDiscussion desk={desk} claimId={claimId} points={pointsOf(claimId)} variations={variations?.variations.filter((v) => v.claimId === claimId) ?? []} />,
     actions: <HeadActions desk={desk} lodged={lodged} />,
     aside: <DeskPanel desk={desk} candidates={candidates} />,
@@ -76,14 +76,15 @@ function HeadActions({ desk, lodged }: { readonly desk: DeskView; readonly lodge
 
 export default async function Review({ params, searchParams }: PageProps) {
   const { id } = await params;
-  const { revision } = await searchParams;
+  const { revision, ...query } = await searchParams;
+  const asked = askedVariation(query);
   const wanted = revision && /^[1-9]\d{0,3}$/.test(revision) ? Number(revision) : undefined;
   const all = await loadFor(`/review/${id}`, (actor) => loadAll(actor, id, wanted));
   const trail = all.desk.you.role === 'editor' ? { href: '/queue', label: 'Queue' } : { href: '/desk', label: 'Desk' };
   const withThreads = all.desk.threads.filter((t) => t.state === 'open' || t.state === 'answered').map((t) => t.anchor.claim);
   return (
     <>
-      <RecordPage view={submissionAsView(all.lodged, { figures: all.figures, reports: all.desk.reports.map(reportAsView) })} slots={slotsFor(all)} trail={trail} open={[...new Set(withThreads)]} />
+      <RecordPage view={submissionAsView(all.lodged, { figures: all.figures, reports: all.desk.reports.map(reportAsView) })} slots={slotsFor(all, asked)} trail={trail} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
       <Letters decisions={all.desk.decisions} />
     </>
   );

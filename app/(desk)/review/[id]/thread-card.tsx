@@ -1,5 +1,8 @@
 'use client';
+import Link from 'next/link';
+import type { Route } from 'next';
 import { useState, type ReactNode } from 'react';
+import { changesInWords } from '@/app/(public)/variations/variation-words';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextareaField } from '@/app/_ui/primitives/control';
 import { Tag } from '@/app/_ui/primitives/tag';
@@ -55,7 +58,7 @@ function Comment({ comment, body }: { readonly comment: CommentView; readonly bo
       <div className="mt-1">{body}</div>
       {variation && (
         <div className="mt-2 rounded border border-dashed border-control px-3 py-2 text-ui">
-          <p className="font-semibold">Variation: {variation.changes.join(', ')}</p>
+          <p className="font-semibold">Variation: <Link href={`/variations/${variation.id}` as Route} className="inline-flex min-h-8 items-center">{changesInWords(variation.changed)}</Link></p>
           {variation.points.map((point, i) => <p key={i}>{variation.points.length > 1 && `${placeText(point.at)}: `}{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official: {shown({ value: point.official })}{variation.unit && ` ${variation.unit}`})</span>}</p>)}
           <p className="text-small text-ink-2">A rerun with other settings. It changes no number of the record.</p>
         </div>
@@ -85,7 +88,7 @@ function Reply({ thread, attachable }: { readonly thread: ThreadView; readonly a
 export function AttachField({ attachable, value, onChange }: { readonly attachable: readonly Attachable[]; readonly value: string; readonly onChange: (id: string) => void }) {
   if (attachable.length === 0) return null;
   return (
-    <SelectField label="Attach a variation" value={value} onChange={(e) => onChange(e.target.value)} hint="Those who read the comment then see it.">
+    <SelectField label="Attach a variation" value={value} onChange={(e) => onChange(e.target.value)} hint="Those who read the comment then see it, with its note. It is attached once.">
       <option value="">none</option>
       {attachable.map((v) => <option key={v.id} value={v.id}>{v.words}</option>)}
     </SelectField>

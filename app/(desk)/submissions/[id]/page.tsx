@@ -1,5 +1,7 @@
 import type { Metadata } from 'next';
 import { redirect } from 'next/navigation';
+import { askedVariation, type AskedVariation, type VariationQuery } from '@/app/(public)/variations/asked-variation';
+import { variationSlot } from '@/app/(public)/variations/variation-slot';
 import { RecordPage } from '@/app/_ui/claim/record-page';
 import type { RecordSlots } from '@/app/_ui/claim/record-view';
 import { Card } from '@/app/_ui/primitives/card';
@@ -18,7 +20,6 @@ import { confirmAuthorship, revise } from '../../compose/actions';
 import { ClaimDiscussion } from '../../review/[id]/claim-discussion';
 import { Letters } from '../../review/[id]/letters';
 import { changeAt, ThreadAnchor } from '../../review/[id]/thread-anchor';
-import { VariationPanel } from '../../review/[id]/variation-panel';
 import { Duplicate } from '../duplicate';
 import { FollowRun } from './follow-run';
 import { Withdraw } from './withdraw';
@@ -27,7 +28,7 @@ export const metadata: Metadata = { title: 'Submission' };
 
 interface PageProps {
   readonly params: Promise<{ readonly id: string }>;
-  readonly searchParams: Promise<{ readonly revision?: string }>;
+  readonly searchParams: Promise<VariationQuery & { readonly revision?: string }>;
 }
 
 /** The authors' own view: a draft of theirs answers too, so that the page can lead them to it. */
@@ -46,14 +47,13 @@ async function loadAll(actor: Actor, id: string, wanted: number | undefined) {
 
 type Loaded = NonNullable<Extract<Awaited<ReturnType<typeof loadAll>>, { ok: true }>['value']>;
 
-function slotsFor({ you, draft, lodged, desk, variations }: Loaded): RecordSlots {
+function slotsFor({ you, draft, lodged, desk, variations }: Loaded, asked: AskedVariation | null): RecordSlots {
   const result = lodged.run?.state === 'measured' ? lodged.run.result : null;
   const pointsOf = (claimId: string) => result?.claims.find((c) => c.id === claimId)?.points ?? [];
-  const curves = Object.keys(lodged.revision.sheet.noise);
   return {
     anchor: (claimId, point) => <ThreadAnchor threads={desk.threads} claimId={claimId} at={pointsOf(claimId)[point]?.at ?? {}} single={pointsOf(claimId).length === 1} />,
     change: (claimId, point) => changeAt(desk.changes, claimId, pointsOf(claimId)[point]?.at ?? {}),
-    action: (claimId) => (variations && result ? <VariationPanel submissionId={lodged.id} claimId={claimId} curves={curves} unit={result.claims.find((c) => c.id === claimId)?.unit ?? ''} own={variations.variations.filter((v) => v.claimId === claimId)} left={variations.left} points={pointsOf(claimId)} /> : null),
+    action: variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result, variations, asked }),
     discussion: (claimId) => <ClaimDiscussion desk={desk} claimId={claimId} points={pointsOf(claimId)} variations={variations?.variations.filter((v) => v.claimId === claimId) ?? []} />,
     actions: <Actions draft={draft} shown={lodged.revision.number} />,
     aside: <NextStep you={you} draft={draft} desk={desk} />,
@@ -100,7 +100,8 @@ function NextStep({ you, draft, desk }: Pick<Loaded, 'you' | 'draft' | 'desk'>) 
 
 export default async function Submission({ params, searchParams }: PageProps) {
   const { id } = await params;
-  const { revision } = await searchParams;
+  const { revision, ...query } = await searchParams;
+  const asked = askedVariation(query);
   const wanted = revision && /^[1-9]\d{0,3}$/.test(revision) ? Number(revision) : undefined;
   const all = await loadFor(`/submissions/${id}`, (actor) => loadAll(actor, id, wanted));
   if (!all) redirect(`/compose/${id}`);
@@ -109,7 +110,7 @@ export default async function Submission({ params, searchParams }: PageProps) {
   return (
     <>
       <FollowRun id={id} running={lodged.run?.state === 'queued' || lodged.run?.state === 'running'} />
-      <RecordPage view={submissionAsView(lodged, { reports: desk.reports.map(reportAsView) })} slots={slotsFor(all)} trail={{ href: '/submissions', label: 'Submissions' }} open={[...new Set(withThreads)]} />
+      <RecordPage view={submissionAsView(lodged, { reports: desk.reports.map(reportAsView) })} slots={slotsFor(all, asked)} trail={{ href: '/submissions', label: 'Submissions' }} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
       <Letters decisions={desk.decisions} />
     </>
   );

@@ -3,13 +3,18 @@ import { cache } from 'react';
 import { RecordPage } from '@/app/_ui/claim/record-page';
 import { recordAsView } from '@/app/views/record-as-view';
 import { loadActor, orNotFound } from '@/lib/http/page-guard';
-import type { Actor } from '@/lib/policy/actor';
+import { isSignedIn, type Actor } from '@/lib/policy/actor';
 import { getRecord } from '@/lib/services/records/get-record';
 import { getPublic } from '@/lib/services/submissions/get-lodged';
+import type { LodgedView } from '@/lib/services/submissions/submission-view';
+import { listVariations } from '@/lib/services/variations/list-variations';
+import { askedVariation, type VariationQuery } from '../../variations/asked-variation';
+import { variationSlot } from '../../variations/variation-slot';
 import { BadgeCard, RecordActions } from './record-aside';
 
 interface RecordProps {
   readonly params: Promise<{ readonly id: string }>;
+  readonly searchParams: Promise<VariationQuery>;
 }
 
 /** Asked by the head and by the body of the page, read once. */
@@ -29,10 +34,20 @@ async function loadBehind(actor: Actor, submissionId: string, revision: number) 
   return lodged.ok ? lodged.value : null;
 }
 
-export default async function PublishedRecordPage({ params }: RecordProps) {
+/** Signed-in readers vary the official run of the revision that was entered. */
+async function variationsOf(actor: Actor, lodged: LodgedView | null) {
+  const list = lodged?.may.vary && isSignedIn(actor) ? await listVariations(actor, lodged.id) : null;
+  return list?.ok ? list.value : null;
+}
+
+export default async function PublishedRecordPage({ params, searchParams }: RecordProps) {
   const { id } = await params;
   const record = orNotFound(await readRecord(id));
-  const lodged = await loadBehind(await loadActor(), record.submissionId, record.document.revision);
-  const slots = { actions: <RecordActions record={record} />, aside: <BadgeCard record={record} /> };
-  return <RecordPage view={{ ...recordAsView(record, lodged), address: `${record.document.domain}/records/${record.id}` }} trail={{ href: '/register', label: 'Register' }} slots={slots} />;
+  const asked = askedVariation(await searchParams);
+  const actor = await loadActor();
+  const lodged = await loadBehind(actor, record.submissionId, record.document.revision);
+  const variations = await variationsOf(actor, lodged);
+  const action = lodged && variations ? variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result: lodged.run?.state === 'measured' ? lodged.run.result : null, variations, asked }) : undefined;
+  const slots = { actions: <RecordActions record={record} />, aside: <BadgeCard record={record} />, ...(action && { action }) };
+  return <RecordPage view={{ ...recordAsView(record, lodged), address: `${record.document.domain}/records/${record.id}` }} trail={{ href: '/register', label: 'Register' }} slots={slots} open={asked ? [asked.claimId] : undefined} />;
 }

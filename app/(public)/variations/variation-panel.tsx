@@ -1,0 +1,85 @@
+'use client';
+import Link from 'next/link';
+import type { Route } from 'next';
+import { useRouter } from 'next/navigation';
+import { useCallback } from 'react';
+import { useProgress } from '@/app/(desk)/compose/[id]/use-progress';
+import { Disclosure } from '@/app/_ui/primitives/disclosure';
+import { ProgressBar } from '@/app/_ui/primitives/progress';
+import { Table } from '@/app/_ui/primitives/table';
+import { formatAt } from '@/app/_ui/claim/setting-names';
+import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
+import { formatProblem } from '@/lib/kernel/problem';
+import type { VariationView } from '@/lib/services/variations/variation-view';
+import type { AskedVariation } from './asked-variation';
+import { VariationForm } from './variation-form';
+import type { VariationSource } from './variation-source';
+import { changesInWords, SEEN_BY } from './variation-words';
+
+interface PanelProps {
+  readonly source: VariationSource;
+  readonly own: readonly VariationView[];
+  readonly left: number;
+  readonly asked: AskedVariation | null;
+}
+
+const isLive = ({ run }: VariationView): boolean => run.state === 'queued' || run.state === 'running';
+
+type Now = ReturnType<typeof useProgress>;
+
+/** Any setting, the band, the modes, the curve: rerun one claim with others, beside the official number and never in its place. */
+export function VariationPanel({ source, own, left, asked }: PanelProps) {
+  const router = useRouter();
+  const look = useCallback(() => router.refresh(), [router]);
+  const now = useProgress(source.submissionId, own.some(isLive), look);
+  return (
+    <Disclosure summary="Vary a setting" open={own.length > 0 || asked !== null}>
+      <div className="grid gap-4 rounded border border-dashed border-control px-4 py-3">
+        <p className="text-ui text-ink-2">A variation of {source.claimId} is seen by you alone until you attach it to a comment or, on a record, open it by its link. The official number never changes. {left} left today.</p>
+        {left > 0 ? <VariationForm source={source} asked={asked} /> : <p className="text-ui">Those of today are used up. More can be asked for tomorrow.</p>}
+        {own.length > 0 && <Saved source={source} own={own} now={now} />}
+      </div>
+    </Disclosure>
+  );
+}
+
+function Saved({ source, own, now }: { readonly source: VariationSource; readonly own: readonly VariationView[]; readonly now: Now }) {
+  const [only] = source.points;
+  return (
+    <Table caption={`Your variations of ${source.claimId}`}>
+      <thead><tr><th scope="col">Changed</th><th scope="col">Result</th><th scope="col">Seen by</th></tr></thead>
+      <tbody>
+        {source.points.length === 1 && only && <tr><th scope="row" className="font-normal!">nothing: the official number</th><td>{formatWithUncertainty(only.value, only.expandedUncertainty, source.unit)}</td><td /></tr>}
+        {own.map((v) => (
+          <tr key={v.id}>
+            <th scope="row" className="font-normal!">
+              <Link href={`/variations/${v.id}` as Route} className="inline-flex min-h-8 items-center">{changesInWords(v.changes)}</Link>
+              {v.note && <span className="block max-w-[40ch] text-small text-ink-2 [overflow-wrap:anywhere]">{v.note}</span>}
+            </th>
+            <td><Outcome variation={v} unit={source.unit} now={now} /></td>
+            <td>{SEEN_BY[v.visibility]}{v.revision !== source.revision && <span className="block text-small text-ink-2">of revision {v.revision}</span>}</td>
+          </tr>
+        ))}
+      </tbody>
+    </Table>
+  );
+}
+
+function Outcome({ variation, unit, now }: { readonly variation: VariationView; readonly unit: string; readonly now: Now }) {
+  const { run } = variation;
+  switch (run.state) {
+    case 'queued':
+    case 'running': {
+      const told = now?.runId === run.id ? now : run;
+      const words = told.doing || (run.state === 'queued' ? 'waiting for a worker' : 'under way');
+      return <><span>{words}</span><ProgressBar label={`Variation: ${changesInWords(variation.changes)}`} fraction={told.fraction} /></>;
+    }
+    case 'stopped': return run.because;
+    case 'refused': return run.problems.map(formatProblem).join(' ');
+    case 'measured': {
+      const claim = run.result.claims.find((c) => c.id === variation.claimId);
+      const stops = claim?.findings.filter((f) => f.level === 'stops-lodging').map((f) => f.text).join(' ');
+      return (claim?.points ?? []).slice(0, 6).map((p, i) => <p key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.value, p.expandedUncertainty, unit)}{p.value === null && stops && `: ${stops}`}</p>);
+    }
+  }
+}
