@@ -61,7 +61,7 @@ const ask = (door: DoorName, what: Ask = {}): Promise<Response> => askDoor(handl
 const asAuthor = (door: DoorName, what: Ask = {}): Promise<Response> => ask(door, { as: bearer(token.author), params: { id: draft }, ...what });
 const bytesOf = async (answer: Promise<Response>): Promise<readonly [number, string]> => [(await answer).status, await (await answer).text()];
 const read = async <T>(answer: Response | Promise<Response>): Promise<T> => (await (await answer).json()) as T;
-const paramsFor = (door: DoorName, id: string): Record<string, string> => ({ id, ...(door.includes('{fileId}') && { fileId: UNKNOWN }), ...(door.includes('{uploadId}') && { uploadId: UNKNOWN, number: '0' }) });
+const paramsFor = (door: DoorName, id: string): Record<string, string> => ({ id, ...(door.includes('{fileId}') && { fileId: UNKNOWN }), ...(door.includes('{uploadId}') && { uploadId: UNKNOWN, number: '0' }), ...(door.includes('{variationId}') && { variationId: UNKNOWN }) });
 const searchFor = (door: DoorName): string => (door.endsWith('/figures') ? `?run=${UNKNOWN}` : '');
 
 /** Everything a write could have left behind. */
@@ -79,6 +79,7 @@ const BODIES: Readonly<Partial<Record<DoorName, unknown>>> = {
   'POST /api/v1/submissions/{id}/uploads': { name: 'long.txt', bytes: 3, sha256: 'a'.repeat(64) },
   'POST /api/v1/submissions/{id}/withdraw': { reason: 'x' },
   'POST /api/v1/submissions/{id}/variations': VARIATION,
+  'PUT /api/v1/submissions/{id}/variations/{variationId}/link': { readable: true },
   'POST /api/v1/submissions/{id}/threads': THREAD,
   'POST /api/v1/threads/{id}/comments': { body: 'x' },
   'POST /api/v1/threads/{id}/close': { closing: 'resolved' },
@@ -459,6 +460,25 @@ describe('every other answer fits its schema', () => {
     const mine = await draftWithBursts(author.actor);
     expect(await troubleOf('author', mine, 'mine.h5')).toEqual([expect.stringMatching(/^mine\.h5: saw a file that ends before/)]);
     expect(await troubleOf('stranger', other, 'other.h5')).toEqual([expect.stringMatching(/^other\.h5: saw a file that ends before/)]);
+  });
+
+  it('for a variation: one’s own beside the official number, and opened by its link once there is a record', async () => {
+    const { variationId } = await read<{ variationId: string }>(asAuthor('POST /api/v1/submissions/{id}/variations', { params: { id: reviewed }, json: { ...VARIATION, changes: { settings: { fLowHz: 40, taper: null }, noise: { curve: 'G2' } }, note: 'Another curve.' } }));
+    const one = { params: { id: reviewed, variationId } };
+    expect(await read(asAuthor('GET /api/v1/submissions/{id}/variations/{variationId}', one))).toMatchObject({ id: variationId, visibility: 'private', run: { state: 'queued' }, official: { id: 'C1' } });
+    await desk.runAll();
+    expect((await read<{ run: { state: string } }>(asAuthor('GET /api/v1/submissions/{id}/variations/{variationId}', one))).run.state).toBe('measured');
+    expect((await ask('GET /api/v1/submissions/{id}/variations/{variationId}', { as: bearer(token.referee), ...one })).status).toBe(404);
+    expect((await asAuthor('PUT /api/v1/submissions/{id}/variations/{variationId}/link', { ...one, json: { readable: true } })).status).toBe(409);
+    const [{ submissionId } = { submissionId: '' }] = await desk.sql<{ submissionId: string }>('select submission_id as "submissionId" from records where id = $1', recordId);
+    const of = await read<{ variationId?: string }>(asAuthor('POST /api/v1/submissions/{id}/variations', { params: { id: submissionId }, json: VARIATION }));
+    await desk.runAll();
+    expect(of).toHaveProperty('variationId');
+    const shared = { params: { id: submissionId, variationId: of.variationId ?? '' } };
+    const asVisitor = async () => (await ask('GET /api/v1/submissions/{id}/variations/{variationId}', { as: {}, ...shared })).status;
+    expect(await asVisitor()).toBe(404);
+    expect(await read(asAuthor('PUT /api/v1/submissions/{id}/variations/{variationId}/link', { ...shared, json: { readable: true } }))).toEqual({ visibility: 'link' });
+    expect(await asVisitor()).toBe(200);
   });
 
   it('for everybody', async () => {
