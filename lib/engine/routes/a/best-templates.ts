@@ -4,6 +4,7 @@ import { brentMaximum, type Top } from '@/lib/engine/series/brent-maximum';
 import { JointSearch, massGrid } from './joint-search';
 import type { Numerics } from './numerics';
 import type { SpectrumStore } from './spectrum-store';
+import { templateBank } from './template-bank';
 import { scanTemplates, type TemplateScan } from './template-scan';
 
 export interface Context {
@@ -34,9 +35,6 @@ const ROUGH_BELOW = 0.02;
 const SHARP = 5e-5;
 /** Of ln of the factor (rule 2.7). */
 const REFINED = 1e-5;
-/** Numbers kept by one scan. */
-const MOST_PAIRS = 1 << 24;
-
 /** What the search reads of a scan. */
 type Scanned = Pick<TemplateScan, 'rough' | 'sharp'>;
 
@@ -54,7 +52,6 @@ class SharpValues {
 
   constructor(
     private readonly scan: Scanned,
-    private readonly signal: number,
     private readonly factors: readonly number[],
   ) {}
 
@@ -62,15 +59,15 @@ class SharpValues {
     const key = template * this.factors.length + g;
     const known = this.known.get(key);
     if (known !== undefined) return known;
-    const made = this.scan.sharp(this.signal, template, this.factors[g]!);
+    const made = this.scan.sharp(template, this.factors[g]!);
     this.known.set(key, made);
     return made;
   }
 }
 
 /** Grid points that could stand beside the best match, by mass, since a scan holds the spectra of one mass at a time. */
-function likely(scan: Scanned, s: number, templates: number, factors: number): { t: number; g: number }[] {
-  const rough = (t: number, g: number): number => scan.rough[(s * templates + t) * factors + g]!;
+function likely(scan: Scanned, templates: number, factors: number): { t: number; g: number }[] {
+  const rough = (t: number, g: number): number => scan.rough[t * factors + g]!;
   let best = 0;
   for (let t = 0; t < templates; t++) for (let g = 0; g < factors; g++) best = Math.max(best, rough(t, g));
   const least = 1 - ROUGH_BELOW;
@@ -134,9 +131,9 @@ function uphill(values: SharpValues, t: number, from: number, factors: number): 
  * Fails:  never; no power gives no hill.
  * Source: settings.md rule 2.7.
  */
-export function hillsOf(scan: Scanned, s: number, templates: number, factors: readonly number[]): Hill[] {
-  const values = new SharpValues(scan, s, factors);
-  const places = likely(scan, s, templates, factors.length);
+export function hillsOf(scan: Scanned, templates: number, factors: readonly number[]): Hill[] {
+  const values = new SharpValues(scan, factors);
+  const places = likely(scan, templates, factors.length);
   for (const { t, g } of places) values.at(t, g);
   const tops = new Map(places.map(({ t, g }) => { const top = uphill(values, t, g, factors.length); return [`${t} ${top}`, { t, g: top }] as const; }));
   const hills = [...tops.values()].map(({ t, g }): Hill => ({ template: t, factor: g, ceiling: values.at(t, g) + riseOf(values, t, g, factors.length) + SHARP }));
@@ -144,23 +141,23 @@ export function hillsOf(scan: Scanned, s: number, templates: number, factors: re
 }
 
 /** The top of one hill: its place by the scan, its height on the route's own bins. */
-function topOf(scan: TemplateScan, s: number, { template, factor }: Hill, a: Side, request: RealRequest, factors: readonly number[], { store, numerics }: Context): Top {
+function topOf(scan: TemplateScan, { template, factor }: Hill, a: Side, request: RealRequest, factors: readonly number[], { store, numerics }: Context): Top {
   const searched = { mass: factors.length > 1, inclination: false, azimuth: false };
   const search = new JointSearch(pairRequest(request, a, template), searched, store, numerics);
   const height = (massFactor: number): Top => ({ x: massFactor, value: search.valueAt({ massFactor, inclinationRad: request.templates[template]!.inclinationRad, azimuthShiftRad: 0 }) });
   const here = factors[factor]!;
   if (factors.length === 1) return height(here);
   const [low, high] = [factors[Math.max(0, factor - 1)]!, factors[Math.min(factors.length - 1, factor + 1)]!];
-  const found = brentMaximum((x) => scan.sharp(s, template, Math.exp(x)), Math.log(low), Math.log(high), Math.log(here), REFINED);
+  const found = brentMaximum((x) => scan.sharp(template, Math.exp(x)), Math.log(low), Math.log(high), Math.log(here), REFINED);
   // The ends of the range are the range's own numbers, not e^{ln x}.
   return height([low, high].find((x) => Math.abs(found.x - Math.log(x)) < 1e-14) ?? Math.exp(found.x));
 }
 
-function bestOf(scan: TemplateScan, s: number, a: Side, request: RealRequest, factors: readonly number[], context: Context): BestPlace {
+function bestOf(scan: TemplateScan, a: Side, request: RealRequest, factors: readonly number[], context: Context): BestPlace {
   let best: BestPlace & { readonly value: number } = { index: 0, massFactor: 1, value: -Infinity };
-  for (const hill of hillsOf(scan, s, request.templates.length, factors)) {
+  for (const hill of hillsOf(scan, request.templates.length, factors)) {
     if (hill.ceiling < best.value) break;
-    const { x, value } = topOf(scan, s, hill, a, request, factors, context);
+    const { x, value } = topOf(scan, hill, a, request, factors, context);
     if (value > best.value || (value === best.value && hill.template < best.index)) best = { index: hill.template, massFactor: x, value };
   }
   return best;
@@ -174,17 +171,14 @@ function bestOf(scan: TemplateScan, s: number, a: Side, request: RealRequest, fa
  * Fails:  never; signals without power in the band get the first template.
  * Source: settings.md rule 2.7 (grid of ratio 1.02, then refined to 1e-5).
  */
-export function bestPlaces(signals: readonly Side[], request: RealRequest, context: Context): BestPlace[] {
+export function bestPlaces(signals: readonly Side[], request: RealRequest, context: Context, everywhere = false): BestPlace[] {
   const factors = request.maximise.includes('templateMass') ? massGrid(request.templateMassRange) : [1];
-  const together = Math.max(1, Math.floor(MOST_PAIRS / (request.templates.length * factors.length)));
-  const places: BestPlace[] = [];
-  for (let from = 0; from < signals.length; from += together) {
-    const some = signals.slice(from, from + together);
-    const onStep = (share: number): void => request.onStep?.((from + share * some.length) / signals.length);
-    const scan = scanTemplates({ signals: some, factors, request: { ...request, onStep }, ...context });
-    places.push(...some.map((a, s) => bestOf(scan, s, a, request, factors, context)));
-  }
-  return places;
+  const shared = { factors, request, ...context };
+  const bank = templateBank({ signals, ...shared });
+  return signals.map((a, s) => {
+    request.onStep?.(s / signals.length);
+    return bestOf(scanTemplates(bank, a, { ...shared, everywhere }), a, request, factors, context);
+  });
 }
 
 /**

@@ -26,9 +26,15 @@ const hasJump = (side: Side, store: SpectrumStore): boolean => {
       ? waveform.content.modes
       : [{ re: waveform.content.plus, im: waveform.content.cross ?? waveform.content.plus }];
   const sizeAt = (i: number): number => Math.max(0, ...parts.map((part) => Math.hypot(part.re[i]!, part.im[i]!)));
-  const top = parts.reduce((most, part) => part.re.reduce((m, x) => Math.max(m, Math.abs(x)), most), 0);
-  return (taper.start === null && sizeAt(0) > 1e-3 * top) || (taper.end === null && sizeAt(last) > 1e-3 * top);
+  const small = (i: number): boolean => parts.some(({ re }) => isLarger(re, 1e3 * sizeAt(i)));
+  return (taper.start === null && sizeAt(0) > 0 && !small(0)) || (taper.end === null && sizeAt(last) > 0 && !small(last));
 };
+
+/** Is any sample so large? From the end, since a record's peak lies there. */
+function isLarger(series: Float64Array, size: number): boolean {
+  for (let i = series.length - 1; i >= 0; i--) if (Math.abs(series[i]!) >= size) return true;
+  return false;
+}
 
 const jumps = new WeakMap<object, Map<string, boolean>>();
 function halvingsFor(side: Side, store: SpectrumStore, numerics: Numerics): number {
@@ -51,11 +57,14 @@ function timeSpectrum(side: Side, content: Content, dF: number, store: SpectrumS
   const key = `${dF}|${grid.dt}|${numerics.interpolationOrder}|${numerics.edgeOrder}|${numerics.topShare}|${taperKey(side.taper)}|${contentKey(content)}`;
   return store.spectrum(side.waveform, key, () => {
     const order = numerics.interpolationOrder;
-    const samples =
-      content.kind === 'line'
-        ? source.lineOfSight(grid, order, content.inclinationRad, content.azimuthRad)
-        : source.mode(grid, order, content.index);
-    const weights = windowWeights(grid, grid.tEnd, side.taper, numerics.edgeOrder);
+    const seriesKey = `${grid.dt}|${grid.n}|${order}|${numerics.edgeOrder}|${taperKey(side.taper)}|${contentKey(content)}`;
+    const { samples, weights } = store.series(side.waveform, seriesKey, () => ({
+      samples:
+        content.kind === 'line'
+          ? source.lineOfSight(grid, order, content.inclinationRad, content.azimuthRad)
+          : source.mode(grid, order, content.index),
+      weights: windowWeights(grid, grid.tEnd, side.taper, numerics.edgeOrder),
+    }));
     // Modes are added bin by bin later, so they count time from one common instant.
     const origin = content.kind === 'line' ? {} : { origin: Math.floor(grid.n / 2) };
     return spectrumOf({

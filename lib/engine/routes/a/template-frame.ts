@@ -4,16 +4,6 @@ import type { Numerics } from './numerics';
 import { gridFor } from './side-spectra';
 import type { SpectrumStore } from './spectrum-store';
 
-/**
- * Bins for many pairs at many masses. A factor on the template's mass stretches one side against the other, so the spectra of
- * one of them can stand on bins that never change: whichever is more numerous is held, the other is transformed once a factor.
- */
-export interface TemplateFrame {
-  readonly held: 'signals' | 'templates';
-  /** Spacing of the bins at a factor on the templates' mass. */
-  readonly dfHz: (factor: number) => number;
-}
-
 /** The padded record is this much longer than the longest lag. */
 const LAG_ROOM = 1.02;
 
@@ -28,21 +18,16 @@ function fitted(period: number, side: Side, store: SpectrumStore, numerics: Nume
 }
 
 /**
- * Chooses what is held and how fine the bins are, so that no lag of any pair at any factor is taken for another.
+ * Width of the bins at a factor on the templates' mass, so fine that no lag of any pair at any factor is taken for another. In bins
+ * every template stands still: a factor moves the signal and the noise.
  * Shape:  time-domain sides; factors rising.
  * Units:  Hz.
  * Error:  none of its own.
  * Fails:  never.
  * Source: a product over a finite lag is told apart by bins of 1/lag.
  */
-export function templateFrame(signals: readonly Side[], templates: readonly Side[], factors: readonly number[], store: SpectrumStore, numerics: Numerics): TemplateFrame {
+export function templateFrame(signals: readonly Side[], templates: readonly Side[], factors: readonly number[], store: SpectrumStore, numerics: Numerics): (factor: number) => number {
   const longest = (sides: readonly Side[]): number => Math.max(...sides.map((side) => spanS(side, store)));
-  const [a, b] = [longest(signals), longest(templates)];
-  const [least, most] = [factors[0]!, factors[factors.length - 1]!];
-  if (signals.length > templates.length) {
-    const df = fitted(LAG_ROOM * (a + b * most), signals[0]!, store, numerics);
-    return { held: 'signals', dfHz: () => df };
-  }
-  const df = fitted(LAG_ROOM * (a / least + b), templates[0]!, store, numerics);
-  return { held: 'templates', dfHz: (factor) => df / factor };
+  const df = fitted(LAG_ROOM * (longest(signals) / factors[0]! + longest(templates)), templates[0]!, store, numerics);
+  return (factor) => df / factor;
 }

@@ -3,7 +3,7 @@ import type { Waveform } from '@/lib/engine/contract/waveform';
 import { spinWeightedHarmonic } from '@/lib/engine/modes/spin-weighted-harmonic';
 import { interpolatePair, type UniformGrid } from '@/lib/engine/series/local-interpolation';
 import { interpolateThroughPolar, polarOf, type ComplexSeries, type PolarSeries } from '@/lib/engine/series/polar';
-import { fastestOfReal, surveyRecord } from './record-survey';
+import { fastestOfReal, surveyRecord, type RecordSurvey } from './record-survey';
 
 /** A uniform grid on a record: every stride-th sample as it stands, or interpolated (stride null). */
 export interface SampleGrid extends UniformGrid {
@@ -34,7 +34,10 @@ export interface TimeSource {
 function exactAxis(waveform: Waveform): Float64Array {
   const { axis, uniformStep } = waveform;
   if (uniformStep === null) return axis;
-  return axis.map((_, k) => axis[0]! + k * uniformStep);
+  const exact = new Float64Array(axis.length);
+  const from = axis[0]!;
+  for (let k = 0; k < exact.length; k++) exact[k] = from + k * uniformStep;
+  return exact;
 }
 
 interface Part extends ComplexSeries {
@@ -53,18 +56,37 @@ function partsOf(waveform: Waveform): { parts: Part[]; real: boolean; angular: b
 }
 
 function every(series: Float64Array, stride: number, n: number): Float64Array {
+  if (stride === 1 && n === series.length) return series;
   const out = new Float64Array(n);
   for (let k = 0; k < n; k++) out[k] = series[k * stride]!;
   return out;
 }
 
-function addTimes(target: ComplexSeries, part: ComplexSeries, y: { re: number; im: number }): void {
-  const { re, im } = target;
+function addTimes({ re, im }: ComplexSeries, part: ComplexSeries, { re: c, im: s }: { re: number; im: number }): void {
+  const { re: x, im: y } = part;
   for (let k = 0; k < re.length; k++) {
-    const [a, b] = [part.re[k]!, part.im[k]!];
-    re[k]! += y.re * a - y.im * b;
-    im[k]! += y.re * b + y.im * a;
+    const a = x[k]!;
+    const b = y[k]!;
+    re[k]! += c * a - s * b;
+    im[k]! += c * b + s * a;
   }
+}
+
+/** Partners by the mirror rule turn alike: one survey tells of both. */
+function isPartner(p: Part, q: Part): boolean {
+  if (p.l !== q.l || p.m !== -q.m) return false;
+  const sign = p.l % 2 === 0 ? 1 : -1;
+  for (let k = p.re.length - 1; k >= 0; k--) if (p.re[k]! !== sign * q.re[k]! || p.im[k]! !== -sign * q.im[k]!) return false;
+  return true;
+}
+
+function surveysOf(axis: Float64Array, parts: readonly Part[]): RecordSurvey[] {
+  const found: RecordSurvey[] = [];
+  parts.forEach((part, i) => {
+    const partner = parts.findIndex((other, j) => j < i && isPartner(other, part));
+    found.push(found[partner] ?? surveyRecord(axis, part));
+  });
+  return found;
 }
 
 /**
@@ -78,7 +100,7 @@ function addTimes(target: ComplexSeries, part: ComplexSeries, y: { re: number; i
 export function timeSource(waveform: Waveform): TimeSource {
   const axis = exactAxis(waveform);
   const { parts, real, angular } = partsOf(waveform);
-  const surveys = real ? [] : parts.map((part) => surveyRecord(axis, part));
+  const surveys = real ? [] : surveysOf(axis, parts);
   const polar = new Map<number, PolarSeries | null>();
   const polarForm = (index: number): PolarSeries | null => {
     const known = polar.get(index);
