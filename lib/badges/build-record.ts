@@ -39,7 +39,7 @@ export function lapseDay(entered: Date): string {
 
 function recordClaim(claim: ResultClaim, covers: readonly string[]): RecordedClaim {
   // Candidates are hints to people under review, never part of what is signed.
-  const { candidates: _, ...kept } = claim;
+  const { candidates: _candidates, search: _search, ...kept } = claim;
   return { ...kept, covered: covers.includes(claim.id) };
 }
 

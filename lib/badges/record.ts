@@ -8,7 +8,7 @@ import type { ResultClaim } from '@/lib/pipeline/result';
  */
 export type RecordId = Brand<string, 'RecordId'>;
 
-export interface RecordedClaim extends Omit<ResultClaim, 'candidates'> {
+export interface RecordedClaim extends Omit<ResultClaim, 'candidates' | 'search'> {
   /** Does the level entered cover this claim? One that differs is covered by none. */
   readonly covered: boolean;
 }

@@ -21,7 +21,18 @@ import type { NumberTable } from './text/table';
 export interface ReadWaveform {
   readonly waveform: Waveform | null;
   readonly findings: readonly Finding[];
+  /** What stands in the heads of its files. */
+  readonly writing: readonly Writing[];
 }
+
+/** One comment of a file. */
+export interface Writing {
+  readonly file: string;
+  readonly text: string;
+}
+
+const writingOf = (tables: readonly ModeTable[]): Writing[] =>
+  [...new Map(tables.map(({ table }) => [table.file, table.comments ?? []] as const))].flatMap(([file, comments]) => comments.map(({ text }) => ({ file, text })));
 
 /**
  * One waveform of a sheet, from its files to house convention.
@@ -64,7 +75,8 @@ export function assembleWaveform(declaration: WaveformDeclaration, tables: reado
   const first = tables[0]!.table;
   const unit = declaration.timeUnit;
   const stops = tables.flatMap(({ table }) => [...notFiniteFindings(table, declaration.columns, unit), ...monotoneFindings(table, table.columns[axisAt]!, unit)]);
-  if (stops.length > 0) return ok({ waveform: null, findings: stops });
+  const writing = writingOf(tables);
+  if (stops.length > 0) return ok({ waveform: null, findings: stops, writing });
   const axis = first.columns[axisAt]!;
   const apart = tables.flatMap(({ table }) => axesApart(first, axis, table, table.columns[axisAt]!));
   if (apart.length > 0) return err(apart);
@@ -72,7 +84,7 @@ export function assembleWaveform(declaration: WaveformDeclaration, tables: reado
     return err([{ code: 'formats/frequency-not-positive', where: whereRow(first, 0), saw: `f = ${axis[0]} ${unit}`, expected: 'frequencies above zero', hint: 'Leave out zero and negative frequencies.' }]);
   const waveform = waveformOf(declaration, tables, axis);
   const gaps = declaration.domain === 'time' && waveform.uniformStep === null ? gapFindings(first, axis, unit, traceOf(waveform.content)) : [];
-  return ok({ waveform, findings: [...gaps, ...headerFindings(declaration, tables)] });
+  return ok({ waveform, findings: [...gaps, ...headerFindings(declaration, tables)], writing });
 }
 
 function waveformOf(declaration: WaveformDeclaration, tables: readonly ModeTable[], axis: Float64Array): Waveform {

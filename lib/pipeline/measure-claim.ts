@@ -18,7 +18,7 @@ export interface Extent {
 export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, extent: Extent, watch: Watch): Measurement {
   const points = (claim.over?.values ?? [null]).map((value) => (claim.over && value !== null ? { [claim.over.setting]: value } : {}));
   const found = inputFindings(claim, sheet, inputs);
-  const resolved = resolve(claim, sheet, inputs);
+  const resolved = resolveInputs(claim, sheet, inputs);
   const stopped = found.some((finding) => finding.level === 'stops-lodging');
   if (stopped || resolved === null) return notComputable(found, points);
   const measurement = measureOrStop(claim, resolved, extent, watch, points);
@@ -32,7 +32,8 @@ function inputFindings(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Finding
   return [...ofWaveforms, ...ofNoise, ...claimFindings(claim), ...duplicateFindings(claim, sheet, inputs.files)];
 }
 
-function resolve(claim: Claim, sheet: ClaimSheet, inputs: Inputs): QuantityInputs | null {
+/** What the claim names, as the engine takes it; null where something of it could not be read. */
+export function resolveInputs(claim: Claim, sheet: ClaimSheet, inputs: Inputs): QuantityInputs | null {
   const found = (name: string): Waveform | null => inputs.waveforms.get(name)?.input ?? null;
   const noise = claim.noise === null ? null : (inputs.noise.get(claim.noise)?.input ?? null);
   const names = waveformNames(claim.of);

@@ -17,6 +17,8 @@ import type { HashedFiles } from './hashed-files';
 export interface Found<T> {
   readonly input: T | null;
   readonly findings: readonly Finding[];
+  /** What is written on it: its names and the comments of its files. */
+  readonly writing: readonly { readonly where: string; readonly text: string }[];
 }
 
 export interface Inputs {
@@ -39,7 +41,7 @@ export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: 
     const read = await readWaveform(declaration, files.open, readHdf5);
     if (read.ok) numbers += numbersIn(read.value.waveform);
     if (numbers > mostNumbers) return err([...problems, tooLarge]);
-    if (read.ok) waveforms.set(declaration.name, { input: read.value.waveform, findings: [...sheetFindings(declaration), ...read.value.findings] });
+    if (read.ok) waveforms.set(declaration.name, { input: read.value.waveform, findings: [...sheetFindings(declaration), ...read.value.findings], writing: read.value.writing.map(({ file, text }) => ({ where: file, text })) });
     else problems.push(...read.error);
   }
   for (const declaration of sheet.noise.values()) {
@@ -60,12 +62,13 @@ function numbersIn(waveform: Waveform | null): number {
 }
 
 async function readCurve(declaration: NoiseDeclaration, files: HashedFiles): Promise<Result<Found<NoiseCurve>, Problem[]>> {
-  if (declaration.kind === 'built-in') return ok({ input: builtInCurve(declaration.curve) ?? null, findings: [] });
+  if (declaration.kind === 'built-in') return ok({ input: builtInCurve(declaration.curve) ?? null, findings: [], writing: [] });
   const read = await readNoise(declaration, files.open);
   if (!read.ok) return read;
-  if (read.value.noise === null) return ok({ input: null, findings: read.value.findings });
+  if (read.value.noise === null) return ok({ input: null, findings: read.value.findings, writing: [] });
   const curve = tabulatedCurve(read.value.noise);
-  return ok(curve.ok ? { input: curve.value.curve, findings: [...curve.value.findings, ...read.value.findings] } : { input: null, findings: curve.error });
+  const writing = read.value.noise.writing.map((text) => ({ where: declaration.file, text }));
+  return ok(curve.ok ? { input: curve.value.curve, findings: [...curve.value.findings, ...read.value.findings], writing } : { input: null, findings: curve.error, writing });
 }
 
 /** Two names may share one file; its faults are told once. */

@@ -1,7 +1,7 @@
 import type { Catalogue } from '@/lib/claims/catalogue';
-import type { ClaimSheet } from '@/lib/claims/claim';
+import type { Claim, ClaimSheet } from '@/lib/claims/claim';
 import { parseClaimSheet } from '@/lib/claims/parse-sheet';
-import type { Figure } from '@/lib/engine/contract/measurement';
+import type { Figure, Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled } from '@/lib/engine/contract/quantity';
 import { ENGINE_VERSION } from '@/lib/engine/version';
 import type { ReadHdf5 } from '@/lib/formats/hdf5/hdf5-ask';
@@ -9,7 +9,9 @@ import type { OpenFile } from '@/lib/formats/open-file';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import { HashedFiles, type StreamingDigest } from './hashed-files';
-import { measureClaim } from './measure-claim';
+import { explainSheet, type Explained } from './explain/explain-sheet';
+import type { Weighed } from './explain/subject';
+import { measureClaim, resolveInputs } from './measure-claim';
 import { readInputs, type Inputs } from './read-inputs';
 import type { FiguresByClaim, ResultClaim, ResultDocument } from './result';
 import { weighClaim } from './weigh-claim';
@@ -30,6 +32,8 @@ export interface ReproduceOptions {
   readonly withFigures: boolean;
   readonly onProgress: (fraction: number, doing: string) => void;
   readonly cancelled: () => boolean;
+  /** Look for readings under which claims that do not agree would; `outOfTime` is a net under the counted budget. */
+  readonly explain?: { readonly outOfTime: () => boolean };
   /** A fresh SHA-256. */
   readonly digest: () => StreamingDigest;
 }
@@ -41,6 +45,8 @@ export interface Reproduced {
 
 /** Share of the progress bar that reading files takes. */
 const readingShare = 0.1;
+/** And that measuring takes where a search comes after it. */
+const measuringShare = 0.6;
 
 export async function reproduceWith(catalogue: Catalogue, source: Source, options: ReproduceOptions): Promise<Result<Reproduced, Problem[]>> {
   const sheet = parseClaimSheet(source.sheetJson, catalogue);
@@ -66,16 +72,28 @@ function fileProgress(sheet: ClaimSheet, options: ReproduceOptions): (doing: str
 
 function measureAll(sheet: ClaimSheet, inputs: Inputs, options: ReproduceOptions): Reproduced {
   const figures: Record<string, readonly Figure[]> = {};
-  const share = (1 - readingShare) / sheet.claims.length;
-  const claims = sheet.claims.map((claim, i): ResultClaim => {
+  const forClaims = options.explain === undefined ? 1 - readingShare : measuringShare;
+  const share = forClaims / sheet.claims.length;
+  const weighed = sheet.claims.map((claim, i): { claim: Claim; measurement: Measurement; result: ResultClaim } => {
     if (options.cancelled()) throw new Cancelled();
     const base = readingShare + i * share;
     const onProgress = (fraction: number, doing: string) => options.onProgress(base + share * Math.min(1, Math.max(0, fraction)), `${claim.id}: ${doing}`);
     onProgress(0, claim.quantity.title);
     const measurement = measureClaim(claim, sheet, inputs, { withFigures: options.withFigures }, { onProgress, cancelled: options.cancelled });
     if (options.withFigures) figures[claim.id] = measurement.figures;
-    return weighClaim(claim, measurement);
+    return { claim, measurement, result: weighClaim(claim, measurement) };
   });
+  const explained = options.explain === undefined ? new Map<string, Explained>() : explainAll(sheet, inputs, weighed, { ...options, ...options.explain });
+  const claims = weighed.map(({ result }): ResultClaim => ({ ...result, ...explained.get(result.id) }));
   options.onProgress(1, 'done');
   return { result: { format: 'counterfoil-result/1', engine: ENGINE_VERSION, title: sheet.title, files: inputs.files.files(), claims }, figures };
+}
+
+function explainAll(sheet: ClaimSheet, inputs: Inputs, measured: readonly Omit<Weighed, 'inputs'>[], { outOfTime, onProgress, cancelled }: ReproduceOptions & { readonly outOfTime: () => boolean }): ReadonlyMap<string, Explained> {
+  const weighed = measured.flatMap((one): Weighed[] => {
+    const resolved = resolveInputs(one.claim, sheet, inputs);
+    return resolved === null ? [] : [{ ...one, inputs: resolved }];
+  });
+  const from = readingShare + measuringShare;
+  return explainSheet(sheet, inputs, weighed, { outOfTime, cancelled, onProgress: (fraction, doing) => onProgress(from + (1 - from) * fraction, doing) });
 }

@@ -3,6 +3,7 @@ import type { Claimed } from '@/lib/claims/claimed';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { MetricBound } from '@/lib/engine/contract/metric-bound';
 import type { Sensitivity } from '@/lib/engine/contract/sensitivity';
+import type { Candidate, SearchOfClaim } from '@/lib/explain/candidate';
 import type { Total } from '@/lib/engine/budget/total';
 import type { Coverage } from '@/lib/verdicts/coverage';
 import type { VerdictWord } from '@/lib/verdicts/verdict';
@@ -53,7 +54,10 @@ export interface ResultClaim {
   readonly settings: readonly UsedSetting[];
   readonly routeB: readonly number[];
   readonly findings: readonly Finding[];
-  readonly candidates: readonly never[];
+  /** Readings under which a claim that differs or is unsettled would agree; hints to people, never part of a record. */
+  readonly candidates: readonly Candidate[];
+  /** What the search for them did; absent where none was made. */
+  readonly search?: SearchOfClaim;
 }
 
 export interface ResultDocument {

@@ -7,6 +7,8 @@ export interface SheetJob {
   readonly sheet: unknown;
   readonly files: readonly { readonly name: string; readonly path: string }[];
   readonly withFigures: boolean;
+  /** Look for readings under which claims that do not agree would. */
+  readonly explain: boolean;
 }
 
 export interface SheetWatch {

@@ -28,9 +28,10 @@ function lastOrbit(context: FlipContext): FlipDraft | null {
   const z = inForce(context, 'massFrame') === 'source' ? redshiftOf(context) : 0;
   const masses = atPoints(context, 'totalMassMsun');
   const low = numberInForce(context, 'fLowHz') ?? context.noise?.curve.fLowHz ?? 0;
-  const edges = masses.map((mass) => (mass === null || z === null ? null : lastOrbitHz(mass * (1 + z))));
-  if (edges.length === 0 || edges.some((edge) => edge === null || edge <= low)) return null;
-  return { convention: 'C05', option: 'last-orbit', setting: 'fHighHz', clause: 'the upper cut-off is the frequency of the last stable orbit', change: { kind: 'rerun', settings: {}, perPoint: edges.map((edge) => ({ fHighHz: Number(edge!.toPrecision(12)) })) }, telling: { supports: [/\bISCO\b/i, /last stable/i] } };
+  if (z === null) return null;
+  const edges = masses.flatMap((mass) => (mass === null ? [] : [Number(lastOrbitHz(mass * (1 + z)).toPrecision(12))]));
+  if (edges.length === 0 || edges.length < masses.length || edges.some((edge) => edge <= low)) return null;
+  return { convention: 'C05', option: 'last-orbit', setting: 'fHighHz', clause: 'the upper cut-off is the frequency of the last stable orbit', change: { kind: 'rerun', settings: {}, perPoint: edges.map((edge) => ({ fHighHz: edge })) }, telling: { supports: [/\bISCO\b/i, /last stable/i] } };
 }
 
 export const upperEdge: FlipsOfConvention = (context) => {

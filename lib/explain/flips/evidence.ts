@@ -12,16 +12,31 @@ export interface Found {
   readonly evidenceFrom: string | null;
 }
 
-const quoted = ({ where, text }: Written): string => `${where}: “${text.length > 80 ? `${text.slice(0, 79)}…` : text}”`;
+/** Letters on either side of the words found. */
+const AROUND = 40;
 
-const firstWith = (texts: readonly Written[], patterns: readonly RegExp[] = []): Written | undefined => texts.find(({ text }) => patterns.some((pattern) => pattern.test(text)));
+/** The words found with a little of what stands around them, on one line. */
+function quoted({ where, text }: Written, from: number, length: number): string {
+  const [start, end] = [Math.max(0, from - AROUND), Math.min(text.length, from + length + AROUND)];
+  const words = text.slice(start, end).replace(/\s+/g, ' ').trim();
+  return `${where}: “${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}”`;
+}
+
+function firstWith(texts: readonly Written[], patterns: readonly RegExp[] = []): string | undefined {
+  for (const written of texts)
+    for (const pattern of patterns) {
+      const found = pattern.exec(written.text);
+      if (found) return quoted(written, found.index, found[0].length);
+    }
+  return undefined;
+}
 
 /** Words on both sides settle nothing. */
 export function evidenceIn(texts: readonly Written[], telling: Telling): Found {
   const speaksFor = firstWith(texts, telling.supports);
   const speaksAgainst = firstWith(texts, telling.contradicts);
-  if (speaksFor !== undefined && speaksAgainst === undefined) return { evidence: 'supports', evidenceFrom: quoted(speaksFor) };
-  if (speaksAgainst !== undefined && speaksFor === undefined) return { evidence: 'contradicts', evidenceFrom: quoted(speaksAgainst) };
+  if (speaksFor !== undefined && speaksAgainst === undefined) return { evidence: 'supports', evidenceFrom: speaksFor };
+  if (speaksAgainst !== undefined && speaksFor === undefined) return { evidence: 'contradicts', evidenceFrom: speaksAgainst };
   return { evidence: 'none', evidenceFrom: null };
 }
 

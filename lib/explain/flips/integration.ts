@@ -15,8 +15,8 @@ export const startOfIntegral: FlipsOfConvention = (context) => {
   const now = numberInForce(context, 'startM');
   const [waveform] = context.waveforms;
   if (!takes(context, 'startM') || now === null || waveform === undefined) return [];
-  const first = waveform.axis[0]!;
-  const last = waveform.axis[waveform.axis.length - 1]!;
+  const [first = 0] = waveform.axis;
+  const last = waveform.axis.at(-1) ?? first;
   const places = [{ at: first, option: 'first', words: 'from the first sample on' }, ...(waveform.junkEndM === null ? [] : [{ at: waveform.junkEndM, option: 'junk-end', words: 'from the declared end of the start-up burst on' }]),
     ...[100, 150, 200].map((later) => ({ at: first + later, option: `first+${later}`, words: `from ${later} M after the first sample on` }))];
   return makeFlips(context, places.filter(({ at }) => Math.abs(at - now) > 1e-9 && at < last).map(({ at, option, words }) => ({

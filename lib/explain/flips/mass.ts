@@ -89,8 +89,8 @@ export const thresholds: FlipsOfConvention = (context) => {
 export const rateLaw: FlipsOfConvention = (context) => {
   const now = inForce(context, 'rateLaw');
   if (context.claim.quantity.id !== 'volume-ratio' || now === undefined) return [];
-  const values = context.points.map(({ value }) => value);
-  const area: FlipDraft | null = now === 'euclidean' && values.every((v) => v !== null && v > 0) ? { convention: 'C18', option: 'area', setting: 'rateLaw', clause: 'the ratio of loudness enters squared instead of cubed', change: { kind: 'factor', factor: values.map((v) => v! ** (-1 / 3)) } } : null;
+  const values = context.points.flatMap(({ value }) => (value !== null && value > 0 ? [value] : []));
+  const area: FlipDraft | null = now === 'euclidean' && values.length === context.points.length ? { convention: 'C18', option: 'area', setting: 'rateLaw', clause: 'the ratio of loudness enters squared instead of cubed', change: { kind: 'factor', factor: values.map((v) => v ** (-1 / 3)) } } : null;
   const other = now === 'euclidean' ? 'comoving' : 'euclidean';
   const needsMass = other === 'comoving' && !inM(context);
   const law: FlipDraft | null = needsMass ? null : { convention: 'C18', option: other, setting: 'rateLaw', clause: other === 'comoving' ? 'the volume is the comoving one of an expanding universe' : 'the volume is that of flat space, ρ³', change: { kind: 'rerun', settings: { rateLaw: other } } };

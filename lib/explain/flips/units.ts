@@ -1,3 +1,4 @@
+import type { BinaryFacts } from '@/lib/engine/contract/waveform';
 import { atPoints, inForce, isSwept, numberInForce, takes, type FlipContext, type SiblingPoint } from './flip-context';
 import { makeFlips, type FlipDraft, type FlipsOfConvention } from './make-flip';
 
@@ -5,19 +6,19 @@ const factor = (convention: FlipDraft['convention'], option: string, k: number |
 
 /** Which body is the first: spins and masses exchanged. */
 export const bodyLabels: FlipsOfConvention = (context) => {
-  const { binary } = context.waveforms[0] ?? { binary: {} };
-  const chi1z = numberInForce(context, 'chi1z') ?? binary?.chi1z ?? 0;
-  const chi2z = numberInForce(context, 'chi2z') ?? binary?.chi2z ?? 0;
+  const binary: BinaryFacts = context.waveforms[0]?.binary ?? {};
+  const chi1z = numberInForce(context, 'chi1z') ?? binary.chi1z ?? 0;
+  const chi2z = numberInForce(context, 'chi2z') ?? binary.chi2z ?? 0;
   if (!takes(context, 'chi1z') || chi1z === chi2z) return [];
   return makeFlips(context, [{ convention: 'C41', option: 'swap', clause: 'the first body is the lighter one: the spins change places', change: { kind: 'rerun', settings: { chi1z: chi2z, chi2z: chi1z } }, exchange: true }]);
 };
 
 /** The sign of a spin, and spins by the total mass instead of the body's. */
 export const spinMeaning: FlipsOfConvention = (context) => {
-  const { binary } = context.waveforms[0] ?? { binary: {} };
-  const [chi1z, chi2z] = [numberInForce(context, 'chi1z') ?? binary?.chi1z ?? 0, numberInForce(context, 'chi2z') ?? binary?.chi2z ?? 0];
+  const binary: BinaryFacts = context.waveforms[0]?.binary ?? {};
+  const [chi1z, chi2z] = [numberInForce(context, 'chi1z') ?? binary.chi1z ?? 0, numberInForce(context, 'chi2z') ?? binary.chi2z ?? 0];
   if (!takes(context, 'chi1z') || (chi1z === 0 && chi2z === 0)) return [];
-  const q = numberInForce(context, 'massRatio') ?? binary?.massRatio ?? 1;
+  const q = numberInForce(context, 'massRatio') ?? binary.massRatio ?? 1;
   const perTotal = [chi1z * ((1 + q) / q) ** 2, chi2z * (1 + q) ** 2] as const;
   return makeFlips(context, [
     { convention: 'C42', option: 'sign', clause: 'spins count as positive against the orbital angular momentum', change: { kind: 'rerun', settings: { chi1z: -chi1z, chi2z: -chi2z } }, exchange: true },
@@ -50,14 +51,20 @@ export const electromagneticUnits: FlipsOfConvention = (context) =>
       ])
     : [];
 
+/** The reference by each value; null where one is missing. */
+function ratios(values: readonly (number | null)[], reference: number | null): number[] | null {
+  const known = values.flatMap((value) => (value !== null && value > 0 && reference !== null ? [reference / value] : []));
+  return known.length === values.length ? known : null;
+}
+
 /** With B instead of B², or with B² and no M²; the reference is the first point of a sweep, or another claim of the sheet. */
 export const fieldLaw: FlipsOfConvention = (context) => {
   if (!ofLuminosity.has(context.claim.quantity.id)) return [];
   const fields = atPoints(context, 'fieldGauss');
   const reference = (isSwept(context, 'fieldGauss') ? fields[0] : siblingField(context, fields[0] ?? null)) ?? null;
-  const linear = reference !== null && fields.every((b) => b !== null && b > 0) && fields.some((b) => b !== reference) ? fields.map((b) => reference / b!) : null;
+  const linear = reference !== null && fields.some((b) => b !== reference) ? ratios(fields, reference) : null;
   const masses = atPoints(context, 'totalMassMsun');
-  const unscaled = isSwept(context, 'totalMassMsun') && masses.every((m) => m !== null) ? masses.map((m) => (masses[0]! / m!) ** 2) : null;
+  const unscaled = isSwept(context, 'totalMassMsun') ? (ratios(masses, masses[0] ?? null)?.map((ratio) => ratio ** 2) ?? null) : null;
   return makeFlips(context, [
     linear === null ? null : factor('C50', 'linear', linear, `the number is carried on from ${reference} G with B instead of B²`),
     unscaled === null ? null : factor('C50', 'no-mass', unscaled, 'the number is carried on from the first mass without M²'),

@@ -98,7 +98,9 @@ export class EditedInputs {
     const shelf = this.curves.get(given) ?? new Map<string, NoiseCurve | null>();
     this.curves.set(given, shelf);
     const key = JSON.stringify(edit);
-    const made = shelf.has(key) ? shelf.get(key)! : editedCurve(given, edit);
+    const known = shelf.get(key);
+    if (known !== undefined) return known;
+    const made = editedCurve(given, edit);
     shelf.set(key, made);
     return made;
   }

@@ -28,16 +28,19 @@ export function joined(changes: readonly Rerun[]): Rerun {
     kind: 'rerun',
     settings: { ...all.settings, ...next.settings },
     inputs: [...(all.inputs ?? []), ...(next.inputs ?? [])],
-    ...(all.scaled ?? next.scaled ? { scaled: (next.scaled ?? all.scaled)! } : {}),
-    ...(all.perPoint ?? next.perPoint ? { perPoint: (next.perPoint ?? all.perPoint)! } : {}),
+    ...(all.scaled ? { scaled: all.scaled } : {}),
+    ...(all.perPoint ? { perPoint: all.perPoint } : {}),
+    ...(next.scaled ? { scaled: next.scaled } : {}),
+    ...(next.perPoint ? { perPoint: next.perPoint } : {}),
   }));
 }
 
 /** The swept values that are asked, scaled where the change scales them. */
 function sweepOf({ claim, points }: Asked, { scaled }: Rerun): MeasureRequest['over'] {
-  if (claim.over === null) return null;
-  const by = scaled?.setting === claim.over.setting ? scaled.by : 1;
-  return { setting: claim.over.setting, values: points.map((i) => claim.over!.values[i]! * by) };
+  const { over } = claim;
+  if (over === null) return null;
+  const by = scaled?.setting === over.setting ? scaled.by : 1;
+  return { setting: over.setting, values: points.map((i) => (over.values[i] ?? Number.NaN) * by) };
 }
 
 function settingsOf({ settings }: Claim, { settings: changed, scaled }: Rerun): DeclaredSettings {
@@ -59,7 +62,7 @@ export function predict(asked: Asked, change: Rerun, asking: Asking): Prediction
     const over = sweepOf({ ...asked, points: [index] }, change);
     const one = measured(asked.claim, inputs, { ...settingsOf(asked.claim, change), ...change.perPoint[index] }, over, asking);
     if ('because' in one && k === 0) return one;
-    values.push('because' in one ? null : one.values[0]!);
+    values.push('because' in one ? null : (one.values[0] ?? null));
   }
   return { values };
 }

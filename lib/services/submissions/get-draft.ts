@@ -7,7 +7,7 @@ import { NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
 import { beforeLodging, isCurrent } from './before-lodging';
 import type { DraftView } from './submission-view';
-import { viewHead, viewRevision } from './view-parts';
+import { viewCandidateAnswers, viewHead, viewRevision } from './view-parts';
 
 /** The composer's view of the current revision, for its authors. */
 export function getDraft(actor: Actor, submissionId: string): Promise<Outcome<DraftView>> {
@@ -18,6 +18,6 @@ export function getDraft(actor: Actor, submissionId: string): Promise<Outcome<Dr
     const revision = await viewRevision(reader, row);
     const found = await findLatestRun(reader, row.id, 'check');
     const check = found ? { run: viewRun(found), current: isCurrent(found.inputsDigest, revision.sheet, revision.files) } : null;
-    return ok({ kind: 'draft', ...head, revision, check, beforeLodging: beforeLodging({ ...revision, authors: head.authors, check }) });
+    return ok({ kind: 'draft', ...head, candidateAnswers: await viewCandidateAnswers(reader, submissionId), revision, check, beforeLodging: beforeLodging({ ...revision, authors: head.authors, check }) });
   });
 }

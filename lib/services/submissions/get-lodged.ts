@@ -9,7 +9,7 @@ import { readSubmission } from '@/lib/services/act';
 import { NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
 import type { LodgedView } from './submission-view';
-import { viewHead, viewRevision } from './view-parts';
+import { viewCandidateAnswers, viewHead, viewRevision } from './view-parts';
 
 /** A lodged revision as authors, referees and the editor see it; the latest unless a number is given. */
 export function getReview(actor: Actor, submissionId: string, revision?: number): Promise<Outcome<LodgedView>> {
@@ -31,6 +31,7 @@ async function viewLodged(kind: LodgedView['kind'], reader: Reader, actor: Actor
     kind,
     ...head,
     title: row.title,
+    candidateAnswers: kind === 'review' ? await viewCandidateAnswers(reader, facts.submissionId) : [],
     revision: await viewRevision(reader, row),
     revisions: lodged.flatMap((r) => (r.lodgedAt ? [{ number: r.number, lodgedAt: r.lodgedAt.toISOString() }] : [])),
     run: run ? viewRun(run) : null,

@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { SUBMISSION_STATES } from '@/lib/policy/submission-state';
+import { candidateAnswerSchema } from '@/lib/services/candidates/candidate-answers';
 import { runSchema } from '@/lib/services/runs/run-schema';
 import type { UploadView } from '@/lib/services/files/upload-view';
 import type { Allowed, DraftView, FileView, LodgedView, RevisionView, SubmissionLine } from './submission-view';
@@ -17,7 +18,7 @@ const sheet = z
 const answer = z.object({ code: z.string(), where: z.string(), text: z.string(), answer: z.string() });
 const author = z.object({ userId: z.string().optional(), name: z.string(), affiliation: z.string().nullable(), orcid: z.object({ id: z.string(), authenticated: z.boolean() }).nullable().optional(), role: z.enum(['author', 'co-author']), confirmed: z.boolean() });
 const allowed = z
-  .object({ edit: z.boolean(), check: z.boolean(), lodge: z.boolean(), withdraw: z.boolean(), revise: z.boolean(), vary: z.boolean(), comment: z.boolean(), report: z.boolean(), invite: z.boolean(), decide: z.boolean() })
+  .object({ edit: z.boolean(), check: z.boolean(), lodge: z.boolean(), withdraw: z.boolean(), revise: z.boolean(), vary: z.boolean(), answerCandidates: z.boolean(), comment: z.boolean(), report: z.boolean(), invite: z.boolean(), decide: z.boolean() })
   .meta({ id: 'Allowed', description: 'What the caller may do now.' }) satisfies z.ZodType<Allowed>;
 
 const revision = z
@@ -43,6 +44,7 @@ const head = {
   authors: z.array(author),
   stateChangedAt: z.string(),
   may: allowed,
+  candidateAnswers: z.array(candidateAnswerSchema).describe('The authors’ word on candidates, the earliest first; empty in public.'),
   revision,
 };
 

@@ -3,6 +3,7 @@
  * This file is what a submission looks like from outside the database. Every field is named here on
  * purpose: nothing reaches a browser because a table happened to have it.
  */
+import type { CandidateAnswerView } from '@/lib/services/candidates/candidate-answers';
 import type { FindingAnswer } from './finding-answers';
 import type { Problem } from '@/lib/kernel/problem';
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
@@ -75,6 +76,7 @@ export interface Allowed {
   readonly withdraw: boolean;
   readonly revise: boolean;
   readonly vary: boolean;
+  readonly answerCandidates: boolean;
   readonly comment: boolean;
   readonly report: boolean;
   readonly invite: boolean;
@@ -90,6 +92,8 @@ interface SubmissionHead {
   readonly authors: readonly AuthorView[];
   readonly stateChangedAt: string;
   readonly may: Allowed;
+  /** What the authors said to candidates of this and of earlier revisions; empty in public. */
+  readonly candidateAnswers: readonly CandidateAnswerView[];
 }
 
 /** The composer's view: authors only. */

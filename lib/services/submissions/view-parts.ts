@@ -1,5 +1,6 @@
 import type { Reader } from '@/db/client';
 import { getSubmissionHead, listAuthors } from '@/db/reads/submissions/submission-head';
+import { listCandidateAnswers } from '@/db/reads/candidates/candidate-answers';
 import { listFindingAnswers } from '@/db/reads/submissions/finding-answers';
 import { listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import type { Actor } from '@/lib/policy/actor';
@@ -7,11 +8,12 @@ import type { SubmissionFacts } from '@/lib/policy/facts';
 import { utcDay } from '@/lib/reviews/anonymity';
 import { formatState } from '@/lib/reviews/states';
 import { sideOf } from '@/lib/services/reviews/side';
+import type { CandidateAnswerView } from '@/lib/services/candidates/candidate-answers';
 import { asDraftSheet } from './draft-sheet';
 import type { AuthorView, DraftView, RevisionView } from './submission-view';
 import { whatIsAllowed } from './what-is-allowed';
 
-type Head = Omit<DraftView, 'kind' | 'revision' | 'check' | 'beforeLodging'>;
+type Head = Omit<DraftView, 'kind' | 'revision' | 'check' | 'beforeLodging' | 'candidateAnswers'>;
 
 export async function viewHead(reader: Reader, actor: Actor, facts: SubmissionFacts): Promise<Head & { readonly currentRevision: number }> {
   const head = await getSubmissionHead(reader, facts.submissionId);
@@ -49,4 +51,10 @@ export async function viewRevision(reader: Reader, row: RevisionRow): Promise<Re
     lodgedAt: row.lodgedAt?.toISOString() ?? null,
     version: row.version,
   };
+}
+
+/** What the authors said to candidates, by day: the hour would say more than anybody needs. */
+export async function viewCandidateAnswers(reader: Reader, submissionId: string): Promise<CandidateAnswerView[]> {
+  const rows = await listCandidateAnswers(reader, submissionId);
+  return rows.map(({ claimId, candidateId, answeredAt, ...row }) => ({ ...row, claim: claimId, candidate: candidateId, answeredAt: dayOnly(answeredAt) }));
 }

@@ -15,6 +15,7 @@ export function whatIsAllowed(actor: Actor, facts: SubmissionFacts): Allowed {
     withdraw: can('submission.withdraw'),
     revise: facts.currentLodged && can('submission.revise'),
     vary: can('submission.vary'),
+    answerCandidates: can('submission.answer-candidate'),
     comment: can('review.comment'),
     report: can('review.report'),
     invite: can('review.invite'),

@@ -4,6 +4,7 @@ import { formatProblems, formatResult } from '@/lib/pipeline/format-result';
 import type { StreamingDigest } from '@/lib/pipeline/hashed-files';
 import { reproduce } from '@/lib/pipeline/reproduce';
 import { readHdf5 } from '@/lib/threads/read-hdf5';
+import { searchLimit } from '@/lib/threads/search-limit';
 import { openSource } from './open-source';
 import { printResult } from './print-result';
 
@@ -27,13 +28,12 @@ const usage = 'reproduce PATH [--json] [--explain], PATH being a folder with cla
 export async function runReproduce(args: readonly string[], screen: Screen): Promise<0 | 1 | 2> {
   const wishes = parseArguments(args);
   if (!('path' in wishes)) return refuse([wishes], args.includes('--json'), screen);
-  if (wishes.explain) screen.err('Candidates for the cause of a difference are not built yet: --explain adds nothing in this version.\n');
   const source = await openSource(wishes.path);
   if (!source.ok) return refuse(source.error, wishes.json, screen);
   try {
     const { sheetJson, openFile } = source.value;
     const progress = progressOn(screen);
-    const run = await reproduce({ sheetJson, openFile, readHdf5 }, { withFigures: false, onProgress: progress.step, cancelled: () => false, digest: sha256 });
+    const run = await reproduce({ sheetJson, openFile, readHdf5 }, { withFigures: false, onProgress: progress.step, cancelled: () => false, digest: sha256, ...(wishes.explain ? { explain: searchLimit() } : {}) });
     progress.end();
     if (!run.ok) return refuse(run.error, wishes.json, screen);
     screen.out(wishes.json ? formatResult(run.value.result) : printResult(run.value.result));

@@ -45,7 +45,7 @@ async function compute(room: HandlerRoom, run: RunInputs, folder: string): Promi
   const files = await fetchInputs(room.store, run.inputs, folder);
   const teller = progressTeller(room.database, { runId: run.id, submissionId: run.submissionId });
   try {
-    const done = await room.compute({ sheet: run.sheet, files, withFigures: true }, { onProgress: (fraction, doing) => (log.note(doing), teller.note(fraction, doing)), signal: room.signal });
+    const done = await room.compute({ sheet: run.sheet, files, withFigures: true, explain: run.kind !== 'variation' }, { onProgress: (fraction, doing) => (log.note(doing), teller.note(fraction, doing)), signal: room.signal });
     return asFinding(done, log.steps());
   } finally {
     await teller.stop();

@@ -3,6 +3,7 @@ import { createReadStream } from 'node:fs';
 import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
 import { reproduce } from '@/lib/pipeline/reproduce';
 import { readHdf5 } from '@/lib/threads/read-hdf5';
+import { searchLimit } from '@/lib/threads/search-limit';
 import type { ProgressNote, SheetTask } from './sheet-task';
 
 /**
@@ -10,12 +11,12 @@ import type { ProgressNote, SheetTask } from './sheet-task';
  * environment, a database or a store. Cancelling ends the thread from outside: a loop over samples
  * cannot listen for messages.
  */
-export default async function sheetThread({ sheet, files, withFigures, port }: SheetTask): ReturnType<typeof reproduce> {
+export default async function sheetThread({ sheet, files, withFigures, explain, port }: SheetTask): ReturnType<typeof reproduce> {
   const note = (fraction: number, doing: string): void => port.postMessage({ fraction, doing } satisfies ProgressNote);
   try {
     return await reproduce(
       { sheetJson: sheet, openFile: openAmong(files), readHdf5 },
-      { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256 },
+      { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256, ...(explain ? { explain: searchLimit() } : {}) },
     );
   } finally {
     port.close();

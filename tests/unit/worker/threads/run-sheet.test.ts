@@ -6,7 +6,7 @@ import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
 
 const folder = join(process.cwd(), 'content', 'specimens', 'radiated-energy');
 const sheet = JSON.parse(readFileSync(join(folder, 'claim.json'), 'utf8')) as unknown;
-const job: SheetJob = { sheet, files: [{ name: 'modes.txt', path: join(folder, 'modes.txt') }], withFigures: true };
+const job: SheetJob = { sheet, files: [{ name: 'modes.txt', path: join(folder, 'modes.txt') }], withFigures: true, explain: false };
 const quiet = { onProgress: () => undefined, signal: new AbortController().signal };
 
 const threads = openSheetThreads({ ...houseLimits, threads: 1 });

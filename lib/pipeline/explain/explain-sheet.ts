@@ -1,0 +1,72 @@
+import type { ClaimSheet } from '@/lib/claims/claim';
+import type { Watch } from '@/lib/engine/contract/quantity';
+import { Workshop } from '@/lib/engine/contract/workshop';
+import type { Candidate, SearchOfClaim } from '@/lib/explain/candidate';
+import type { SiblingPoint } from '@/lib/explain/flips/flip-context';
+import { judge } from '@/lib/explain/search/judge';
+import type { Inputs } from '../read-inputs';
+import { PredictionCollector } from './collect-predictions';
+import { EditedInputs } from './edit-inputs';
+import { extraNumberOf } from './extra-number-of';
+import type { Asking } from './predict';
+import { subjectOf, type Subject, type Weighed } from './subject';
+
+/** What the search says of one claim. */
+export interface Explained {
+  readonly candidates: readonly Candidate[];
+  readonly search: SearchOfClaim;
+}
+
+export interface Explaining {
+  /** A net under the counted budget: true ends the search where it stands. */
+  readonly outOfTime: () => boolean;
+  readonly onProgress: Watch['onProgress'];
+  readonly cancelled: Watch['cancelled'];
+}
+
+/** Values of the same quantity in the sheet, which a wrong scaling may have started from. */
+const siblingsOf = (weighed: readonly Weighed[], quantity: string): SiblingPoint[] =>
+  weighed.filter(({ claim }) => claim.quantity.id === quantity).flatMap(({ claim, measurement }) => {
+    const value = measurement.points[0]?.value ?? null;
+    const field = claim.settings.fieldGauss ?? null;
+    return value === null ? [] : [{ claimId: claim.id, value, fieldGauss: field, totalMassMsun: claim.settings.totalMassMsun ?? null }];
+  });
+
+/** The same sheet over the same bytes draws the same decoys. */
+const seedOf = (sheet: ClaimSheet, inputs: Inputs): string => [...inputs.files.files().map(({ sha256 }) => sha256), ...sheet.claims.map(({ id, claimed }) => `${id}=${claimed.map(({ printed }) => printed).join()}`)].join('|');
+
+/**
+ * Looks for the reading under which claims that differ or are unsettled would agree. All claims of the sheet are
+ * judged together. Pure: files were read before, and the clock is an argument.
+ * Shape:  one entry for each claim that was searched.
+ * Fails:  throws Cancelled when told to stop; a reading that gives no number is counted and passed over.
+ * Source: domain reference 3.2.
+ */
+export function explainSheet(sheet: ClaimSheet, inputs: Inputs, weighed: readonly Weighed[], how: Explaining): ReadonlyMap<string, Explained> {
+  const subjects = weighed.map((one) => subjectOf(one, sheet, inputs, siblingsOf(weighed, one.claim.quantity.id))).filter((subject): subject is Subject => subject !== null);
+  if (!subjects.some(({ judged }) => judged.wanting)) return new Map();
+  const asking: Asking = { workshop: new Workshop(), edits: new EditedInputs(), watch: { onProgress: () => undefined, cancelled: how.cancelled } };
+  const { tried, left, stoppedBecause } = new PredictionCollector(subjects, { ...asking, ...how }).collect();
+  how.onProgress(0.8, 'how often chance would fit as well');
+  const verdicts = judge(subjects.map(({ judged }) => judged), tried, { seed: seedOf(sheet, inputs) });
+  const explained = new Map<string, Explained>();
+  for (const subject of subjects) {
+    const found = verdicts.get(subject.judged.id);
+    if (found === undefined) continue;
+    how.onProgress(0.9, `${subject.judged.id}: the number that would tell them apart`);
+    const extraNumber = how.outOfTime() ? null : extraNumberOf(subject, found.candidates, tried, asking);
+    explained.set(subject.judged.id, {
+      candidates: found.candidates.map((candidate) => atAllPoints(candidate, subject)),
+      search: { ...found.search, left: left.get(subject.judged.id) ?? 0, stoppedBecause, extraNumber },
+    });
+  }
+  return explained;
+}
+
+/** Values stand at the claim's own points again; those that were not asked have none. */
+function atAllPoints(candidate: Candidate, { asked: { claim, points } }: Subject): Candidate {
+  if (claim.claimed.length === points.length) return candidate;
+  const values: (number | null)[] = claim.claimed.map(() => null);
+  points.forEach((index, k) => (values[index] = candidate.values[k] ?? null));
+  return { ...candidate, values };
+}

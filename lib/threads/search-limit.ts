@@ -1,0 +1,8 @@
+/** The search for other readings is bounded by what it counts; this is the net under it. */
+const SEARCH_LIMIT_MS = 120_000;
+
+/** Begins to count when it is first asked. */
+export function searchLimit(limitMs = SEARCH_LIMIT_MS): { readonly outOfTime: () => boolean } {
+  let began: number | null = null;
+  return { outOfTime: () => performance.now() - (began ??= performance.now()) > limitMs };
+}
