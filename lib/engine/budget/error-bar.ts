@@ -18,7 +18,10 @@ interface Knob {
   readonly numerics: Numerics;
 }
 
-const knob = (name: string, change: Partial<Numerics>): Knob => ({ name, numerics: { ...houseNumerics, refineStep: false, ...change } });
+/** Values read from compressed nodes are compared with the sums over all bins: what that moves enters the error. */
+const onBins: Numerics = { ...houseNumerics, compress: false };
+
+const knob = (name: string, change: Partial<Numerics>): Knob => ({ name, numerics: { ...onBins, refineStep: false, ...change } });
 
 /** engine.md: step/2, padding ×2, end weights 8 → 6, noise table step/2, interpolation 8 → 6, upper end lowered. */
 const knobs: readonly Knob[] = [
@@ -78,7 +81,7 @@ export const isPrinted = (request: PointRequest): boolean =>
  * Source: engine.md (error bar by itself); JCGM 100:2008 for the combination.
  */
 export function computationError(recipe: Recipe, request: PointRequest, found: Evaluated, store: SpectrumStore): ComputationError {
-  const base = recipe.again(kitOf(houseNumerics, store), request, found);
+  const base = recipe.again(kitOf(onBins, store), request, found);
   let quadrature = Math.abs(base - found.value) + (found.doubt ?? 0);
   let largest = { name: 'none', by: 0 };
   for (const { name, numerics } of knobs) {
@@ -90,6 +93,6 @@ export function computationError(recipe: Recipe, request: PointRequest, found: E
   }
   quadrature = Math.max(quadrature, recipe.floor(found.value));
   const shorter = withEach(request, printedShorter);
-  const rounding = isPrinted(request) ? Math.abs(recipe.again(kitOf(houseNumerics, store), shorter, found) - base) / 10 : 0;
+  const rounding = isPrinted(request) ? Math.abs(recipe.again(kitOf(onBins, store), shorter, found) - base) / 10 : 0;
   return { quadrature, rounding, largestKnob: largest.name, expanded: expandedOf([standardOf(quadrature), standardOf(rounding)]) };
 }

@@ -1,7 +1,7 @@
 import type { BinWeights } from './bin-weights';
 import type { Spectrum } from './spectrum';
 
-const TOP_PART = 0.85;
+export const TOP_PART = 0.85;
 /** Weighted power that adds nothing to a double. */
 const UNSEEN = 1e-17;
 const TRIM_BLOCK = 64;

@@ -48,7 +48,14 @@ interface Builder {
   readonly last: number;
   readonly logF: (bin: number) => number;
   readonly share: Float64Array;
-  readonly doubt: { bin: number; weight: number }[];
+  readonly doubt: BinShare[];
+  /** The edges' own weights, where they are kept apart from those between them. */
+  readonly added: BinShare[];
+}
+
+interface BinShare {
+  readonly bin: number;
+  readonly weight: number;
 }
 
 /** Places `order` end weights around an edge at f; direction +1 integrates upwards from it, −1 up to it. */
@@ -71,6 +78,7 @@ function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weig
     const bin = inside + direction * (offset + j);
     const added = b.share[j]! * weigh(bin);
     if (b.values !== null) b.values[bin - b.first]! += added;
+    else b.added.push({ bin, weight: added });
     if (doubtful) b.doubt.push({ bin, weight: added });
   }
   if (!doubtful || most < 4) return;
@@ -109,18 +117,18 @@ function addKinks(b: Builder): void {
 
 /**
  * Weights that turn a plain sum over bins into the integral of g/S between exact band edges.
- * Shape:  a run of bins that covers the band and the stencils just outside it; empty when the band holds nothing.
+ * Shape:  a run of bins that covers the band and the stencils just outside it; empty when the band holds nothing. Zeros may be lent for it.
  * Units:  values 1/S in Hz; multiply the sum by dfHz.
  * Error:  order `order` (8) in the bin spacing at the edges and at every kink of a tabulated curve, spectral between.
  * Fails:  never; NaN in the curve stays NaN.
  * Source: engine design (fractional end weights). A hard mask would leave 1e-8 to 1e-5.
  */
-export function binWeights(weigher: NoiseWeigher, range: BinRange): BinWeights {
+export function binWeights(weigher: NoiseWeigher, range: BinRange, lend: (n: number) => Float64Array = (n) => new Float64Array(n)): BinWeights {
   const { dfHz } = range;
   const frame = frameOf(range);
   if (frame === null) return { first: range.firstBin, values: new Float64Array(0), dfHz, doubt: [] };
   const { first, last, inLow, inHigh } = frame;
-  const values = new Float64Array(last - first + 1);
+  const values = lend(last - first + 1);
   const b = builderOf(weigher, range, frame, values);
   if (inHigh >= inLow) weigher.fill(values.subarray(inLow - first, inHigh - first + 1), logBins(last), inLow, inHigh, Math.log(dfHz));
   addEdges(b);
@@ -146,7 +154,7 @@ function frameOf({ dfHz, fLowHz, fHighHz, firstBin, lastBin, order }: BinRange):
 function builderOf(weigher: NoiseWeigher, range: BinRange, { first, last }: Frame, values: Float64Array | null): Builder {
   const logs = logBins(last);
   const offset = Math.log(range.dfHz);
-  return { range, weigher, values, first, last, logF: (bin) => logs[bin]! + offset, share: new Float64Array(range.order), doubt: [] };
+  return { range, weigher, values, first, last, logF: (bin) => logs[bin]! + offset, share: new Float64Array(range.order), doubt: [], added: [] };
 }
 
 function addEdges(b: Builder): void {
@@ -155,6 +163,23 @@ function addEdges(b: Builder): void {
   const highKink = weigher.firstKinkAbove(range.fHighHz * (1 - 1e-15));
   addEdge(b, range.fLowHz, 1, range.order, (bin) => weigher.continuedAt(lowKink, -1, b.logF(bin)));
   addEdge(b, range.fHighHz, -1, range.order, (bin) => weigher.continuedAt(highKink, -1, b.logF(bin)));
+}
+
+/** What the band's edges add to a plain sum of 1/S over bins inLow … inHigh, for a curve without kinks. */
+export interface BandEdges {
+  readonly inLow: number;
+  readonly inHigh: number;
+  readonly added: readonly BinShare[];
+  readonly doubt: BinWeights['doubt'];
+}
+
+/** The edges of `binWeights` without the weights between them; null when the band holds no bin. */
+export function bandEdges(weigher: NoiseWeigher, range: BinRange): BandEdges | null {
+  const frame = frameOf(range);
+  if (frame === null) return null;
+  const b = builderOf(weigher, range, frame, null);
+  addEdges(b);
+  return { inLow: frame.inLow, inHigh: frame.inHigh, added: b.added, doubt: b.doubt };
 }
 
 const GLANCE_RUN = 4;

@@ -100,10 +100,26 @@ const readTable = ({ coefficients: c, start, perUnit, cells }: Table, logF: numb
 
 /** Halve the step until the table's own middle points agree with the formula. */
 function tableOf(curve: NoiseCurve, halvings: number): Table {
-  let step = TABLE_STEP;
+  let step = likelyStep(curve);
   let table = buildTable(curve, step);
   while (step > SMALLEST_STEP && worstMiddle(curve, table) > TABLE_ERROR) table = buildTable(curve, (step /= 2));
   return halvings === 0 ? table : buildTable(curve, step / 2 ** halvings);
+}
+
+const SAMPLED_CELLS = 24;
+
+/** The step that some cells need, so that whole tables too coarse for them are not built. */
+function likelyStep(curve: NoiseCurve): number {
+  const [low, high] = [Math.log(curve.fLowHz), Math.log(curve.fHighHz)];
+  const tooCoarse = (step: number): boolean =>
+    Array.from({ length: SAMPLED_CELLS }, (_, i) => low + 4 * step + ((high - low - 8 * step) * i) / (SAMPLED_CELLS - 1)).some((at) => {
+      const value = (place: number): number => 1 / curve.psd(Math.exp(at + place * step));
+      const read = (150 * (value(0) + value(1)) - 25 * (value(-1) + value(2)) + 3 * (value(-2) + value(3))) / 256;
+      return Math.abs(read / value(0.5) - 1) > TABLE_ERROR;
+    });
+  let step = TABLE_STEP;
+  while (step > SMALLEST_STEP && high - low > 16 * step && tooCoarse(step)) step /= 2;
+  return step;
 }
 
 function worstMiddle(curve: NoiseCurve, table: Table): number {

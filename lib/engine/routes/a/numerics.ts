@@ -21,6 +21,8 @@ export interface Numerics {
   readonly refineStep: boolean;
   /** Halve bins that do not resolve the band's edges; off while scanning. */
   readonly refineBins: boolean;
+  /** Neighbouring masses of a sweep may be read from compressed nodes instead of bins. */
+  readonly compress: boolean;
 }
 
 export const houseNumerics: Numerics = {
@@ -33,4 +35,5 @@ export const houseNumerics: Numerics = {
   kinkChange: 0.6,
   refineStep: true,
   refineBins: true,
+  compress: true,
 };

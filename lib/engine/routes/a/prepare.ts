@@ -22,11 +22,13 @@ export interface Prepared {
 /** Fraction of a waveform's weighted power allowed in the top of its own grid before the step is halved. */
 const EMPTY_TOP = 1e-13;
 /** Bins are halved until two orders less at the band's edges, or (for a file without a length) half the bins, move the power by less. */
-const SETTLED = 3e-9;
+export const SETTLED = 3e-9;
+/** That falls at best by two to the order less one with every halving: bins that are far off need not be looked at halving by halving. */
+const MOST_HALVINGS = 3;
 
-function rangeFor(
+export function rangeFor(
   spectra: readonly Spectrum[],
-  sides: readonly Side[],
+  sides: readonly Pick<Side, 'secondsPerUnit'>[],
   { noise, fLowHz, fHighHz }: Band,
   dfHz: number,
   numerics: Numerics,
@@ -62,8 +64,8 @@ const everySecond = (values: Float64Array): Float64Array =>
   Float64Array.from({ length: (values.length + 1) >> 1 }, (_, k) => values[2 * k]!);
 
 interface Outlook {
-  /** Does the power of some side still hang on how the band's edges are resolved by the bins? */
-  readonly loose: boolean;
+  /** Halvings that the bins still need at least, if the power of some side hangs on how they resolve the band's edges. */
+  readonly halvings: number;
   readonly liveLast: number;
 }
 
@@ -79,15 +81,16 @@ function outlook(
   const dfHz = dF[0]! / sides[0]!.secondsPerUnit;
   const weigher = store.weigher(band.noise, numerics.noiseTableHalvings);
   const glance = glanceAtEdges(weigher, rangeFor(spectra, sides, band, dfHz, numerics));
-  if (glance === null) return { loose: false, liveLast: Infinity };
+  if (glance === null) return { halvings: 0, liveLast: Infinity };
   const views = spectra.map((s) => {
     const { at: power } = powersOf(s);
     const all = glance.sum(power);
     const doubt = glance.doubt.reduce((sum, { bin, weight }) => sum + weight * power[bin]!, 0);
     const liveLast = all > 0 ? lastLiveBin(s, all, weigher.ceiling) : Infinity;
-    return { loose: Math.abs(doubt) > SETTLED * Math.abs(all), liveLast };
+    const over = Math.abs(doubt) / (SETTLED * Math.abs(all));
+    return { halvings: over > 1 ? Math.max(1, Math.min(MOST_HALVINGS, Math.ceil(Math.log2(over) / (numerics.edgeOrder - 1)))) : 0, liveLast };
   });
-  return { loose: views.some(({ loose }) => loose), liveLast: Math.max(...views.map(({ liveLast }) => liveLast)) };
+  return { halvings: Math.max(...views.map(({ halvings }) => halvings)), liveLast: Math.max(...views.map(({ liveLast }) => liveLast)) };
 }
 
 /** A frequency-domain file has no length of its own: is the power still different on every second bin? */
@@ -153,7 +156,7 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
     const plan = spacing(request, store, unpadded, extra);
     const spectra = spectraOn(request, plan, store, numerics, contents);
     const mayPad = numerics.refineBins && plan.doublings < plan.mostDoublings;
-    const { loose, liveLast } = outlook(request, plan.dF, spectra, store, numerics);
+    const { halvings, liveLast } = outlook(request, plan.dF, spectra, store, numerics);
     const empty = (): boolean =>
       spectra.every((s, i) =>
         holdsRoundingOnly(
@@ -162,8 +165,8 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
           (request.band.fHighHz * request.sides[i]!.secondsPerUnit) / s.dF,
         ),
       );
-    if (mayPad && loose && !empty()) {
-      extra = padded(request, plan, store);
+    if (mayPad && halvings > 0 && !empty()) {
+      extra = padded(request, plan, store, halvings);
       continue;
     }
     const found = onBins(request, plan, spectra, liveLast, store, numerics);
@@ -178,8 +181,8 @@ export function prepare(request: PrepareRequest, store: SpectrumStore, numerics:
   }
 }
 
-function padded(request: PrepareRequest, plan: Spacing, store: SpectrumStore): number {
-  const extra = plan.doublings + 1;
+function padded(request: PrepareRequest, plan: Spacing, store: SpectrumStore, halvings = 1): number {
+  const extra = plan.doublings + halvings;
   for (const { waveform } of request.sides) if (waveform.domain === 'frequency') store.pad(waveform, extra);
   return extra;
 }

@@ -10,9 +10,11 @@ import { houseNumerics, type Numerics } from './numerics';
 import { prepare, type Prepared } from './prepare';
 import type { Content } from './side-spectra';
 import type { Spectrum } from './spectrum';
+import type { SweptAlignment } from './pair-sweep';
 import { sightMatcher } from './sight-matcher';
 import { closedFormPower } from './closed-form-power';
 import { SpectrumStore } from './spectrum-store';
+import { sweepStep } from './sweep-memory';
 import type { BinWeights } from './bin-weights';
 
 const strainScale = (side: Side): number => side.strainPerUnit * side.secondsPerUnit;
@@ -81,8 +83,11 @@ function bestTemplates(signals: readonly Side[], request: TemplateRequest, store
 /** The joint search, or its outcome at a factor on b's mass that is known already. */
 function searchedOutcome(request: MatchRequest, massFactor: number | null, store: SpectrumStore, numerics: Numerics): MatchOutcome {
   const searched = searchedIn(request);
+  const step = massFactor === null ? sweepStep(request, store, numerics) : null;
+  if (step?.swept) return sweptOutcome(request, step.swept);
   const search = new JointSearch(request, searched, store, numerics);
   const { pair, alignment, placement, onBound } = massFactor === null ? search.run() : search.at({ massFactor, inclinationRad: request.b.inclinationRad, azimuthShiftRad: 0 });
+  step?.remember({ pair, alignment, band: request.band });
   const { norms } = alignment;
   const scales = [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] as const;
   const mismatch =
@@ -97,6 +102,13 @@ function searchedOutcome(request: MatchRequest, massFactor: number | null, store
     ...(searched.mass ? { massFactor: placement.massFactor, onBound } : {}),
   };
 }
+
+const sweptOutcome = (request: MatchRequest, { pair, value, mismatch, x, turnRad }: SweptAlignment): MatchOutcome => ({
+  match: value,
+  mismatch,
+  timeShiftS: request.maximise.includes('time') ? shiftS(pair, x) : 0,
+  phaseShiftRad: turnRad,
+});
 
 function residualPower(request: MatchRequest, at: MatchOutcome, store: SpectrumStore, numerics: Numerics): number {
   const search = new JointSearch(request, searchedIn(request), store, numerics);

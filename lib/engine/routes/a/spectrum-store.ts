@@ -4,12 +4,21 @@ import type { Waveform } from '@/lib/engine/contract/waveform';
 import { frequencySource, type FrequencySource } from './frequency-source';
 import { noiseWeigher, type NoiseWeigher } from './noise-weigher';
 import type { Spectrum } from './spectrum';
-import { timeSource, type TimeSource } from './time-source';
+import type { SweepMemory } from './sweep-memory';
+import { timeSource, type Samples, type TimeSource } from './time-source';
 
 /** Spectra of one waveform that are kept: a mass-free search needs few, a search over the template's mass many once. */
 const MOST_SPECTRA = 40;
 /** Bins kept for one waveform: with what is derived from them about 250 MB. Noise with lines can ask for a million bins a spectrum. */
 const MOST_BINS = 1 << 22;
+
+/** A record on its uniform grid. */
+export interface WindowedSeries {
+  readonly samples: Samples;
+  readonly weights: Float64Array;
+}
+
+const MOST_SERIES = 2;
 
 interface Shelf {
   time?: TimeSource;
@@ -19,6 +28,10 @@ interface Shelf {
   /** Halvings of the bin spacing that this waveform was found to need. */
   paddings: number;
   readonly spectra: Map<string, Spectrum>;
+  /** The last series that were resampled and windowed: spectra on other bins start from them. */
+  readonly series: Map<string, WindowedSeries>;
+  /** Sweeps over mass in which this waveform stands first. */
+  readonly sweeps: SweepMemory[];
 }
 
 /**
@@ -32,7 +45,7 @@ export class SpectrumStore {
   private shelf(waveform: Waveform): Shelf {
     const known = this.shelves.get(waveform);
     if (known) return known;
-    const made: Shelf = { halvings: 0, paddings: 0, spectra: new Map() };
+    const made: Shelf = { halvings: 0, paddings: 0, spectra: new Map(), series: new Map(), sweeps: [] };
     this.shelves.set(waveform, made);
     return made;
   }
@@ -61,6 +74,18 @@ export class SpectrumStore {
 
   pad(waveform: Waveform, paddings: number): void {
     this.shelf(waveform).paddings = paddings;
+  }
+
+  series(waveform: Waveform, key: string, make: () => WindowedSeries): WindowedSeries {
+    const { series } = this.shelf(waveform);
+    const made = series.get(key) ?? make();
+    for (const oldest of series.keys()) if (series.size >= MOST_SERIES && oldest !== key) series.delete(oldest);
+    series.set(key, made);
+    return made;
+  }
+
+  sweeps(waveform: Waveform): SweepMemory[] {
+    return this.shelf(waveform).sweeps;
   }
 
   spectrum(waveform: Waveform, key: string, make: () => Spectrum): Spectrum {

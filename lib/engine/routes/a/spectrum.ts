@@ -1,4 +1,5 @@
-import { powerOfTwoFrom, transformOfSize } from '@/lib/engine/fourier/transform';
+import { paddedTransform } from '@/lib/engine/fourier/padded-transform';
+import { powerOfTwoFrom } from '@/lib/engine/fourier/transform';
 import { zoomTransform } from '@/lib/engine/fourier/zoom-transform';
 import type { Variable } from '@/lib/engine/contract/waveform';
 import type { SampleGrid, Samples } from './time-source';
@@ -51,20 +52,6 @@ function zoomed(samples: Samples, weights: Float64Array, theta: number, origin: 
   return zoomTransform({ samples: data, firstIndex: -origin, theta, firstBin: -last, bins: 2 * last + 1 });
 }
 
-/** Interleaved bins of one circular transform; the reference sample stands at index 0, so no phase has to be undone. */
-function transformed(samples: Samples, weights: Float64Array, size: number, origin: number): Float64Array {
-  const data = new Float64Array(2 * size);
-  const { re, im } = samples;
-  for (let k = 0; k < re.length; k++) {
-    const at = 2 * (k >= origin ? k - origin : k - origin + size);
-    data[at] = re[k]! * weights[k]!;
-    if (im !== null) data[at + 1] = im[k]! * weights[k]!;
-  }
-  const out = new Float64Array(2 * size);
-  transformOfSize(size).forward(out, data);
-  return out;
-}
-
 /** Division by (2πif)^n turns news or ψ₄ into strain; the same factor serves Z and Y. */
 function toStrain(re: Float64Array, im: Float64Array, dF: number, order: number): void {
   if (order === 0) return;
@@ -107,7 +94,7 @@ export function spectrumOf(request: SpectrumRequest): Spectrum {
   const fits = Math.abs(size * theta - 1) < 1e-12 && size >= grid.n;
   const gridNyquist = 0.5 / grid.dt;
   const lastBin = Math.floor(gridNyquist / dF) + BINS_PAST_THE_END;
-  const bins = fits ? transformed(samples, weights, size, origin) : zoomed(samples, weights, theta, origin, lastBin);
+  const bins = fits ? paddedTransform({ ...samples, weights, origin }, size, Math.min(size, powerOfTwoFrom(grid.n))) : zoomed(samples, weights, theta, origin, lastBin);
   const zRe = new Float64Array(lastBin + 1);
   const zIm = new Float64Array(lastBin + 1);
   const yRe = new Float64Array(lastBin + 1);

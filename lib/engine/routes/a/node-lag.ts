@@ -1,0 +1,176 @@
+import { nodeOffsets } from './chebyshev-blocks';
+import type { CompressedBins } from './compressed-bins';
+import type { NodeBand } from './node-band';
+
+/** Σ q e^{2πikδ} and its first two derivatives with respect to 2πδ. */
+export interface LagSums {
+  re: number;
+  im: number;
+  re1: number;
+  im1: number;
+  re2: number;
+  im2: number;
+}
+
+const TURN = 2 * Math.PI;
+const MOST_NODES = 16;
+
+/** Columns of an aligned pair: D = a − b. */
+export const DD = 0;
+export const RE = 1;
+export const IM = 2;
+export const BB = 3;
+
+type F = Float64Array;
+/** Weighted columns of the pair in use: of blocks, and of loose nodes. One pair is looked at at a time. */
+let [wr, wi, lr, li]: [F, F, F, F] = [new Float64Array(0), new Float64Array(0), new Float64Array(0), new Float64Array(0)];
+const cos = new Float64Array(MOST_NODES);
+const sin = new Float64Array(MOST_NODES);
+
+/** The product of an aligned pair over a band at one mass, as a function of a further shift of b; good until the next is made. */
+export class NodeLag {
+  constructor(
+    private readonly bins: CompressedBins,
+    private readonly band: NodeBand,
+  ) {
+    const { columns } = bins.run;
+    const { weight, loose } = band;
+    const [er, ei, bb] = [columns[RE], columns[IM], columns[BB]];
+    const start = band.to >= band.from ? bins.blocks[band.from]!.offset : 0;
+    const end = band.to >= band.from ? bins.blocks[band.to]!.offset + bins.blocks[band.to]!.nodes : 0;
+    if (wr.length < Math.max(end, loose.n)) [wr, wi, lr, li] = [0, 0, 0, 0].map(() => new Float64Array(2 * Math.max(end, loose.n))) as [F, F, F, F];
+    for (let i = start; i < end; i++) {
+      wr[i] = weight[i]! * (er[i]! + bb[i]!);
+      wi[i] = weight[i]! * ei[i]!;
+    }
+    for (let i = 0; i < loose.n; i++) {
+      lr[i] = loose.weight[i]! * (loose.columns[RE][i]! + loose.columns[BB][i]!);
+      li[i] = loose.weight[i]! * loose.columns[IM][i]!;
+    }
+  }
+
+  /** Rotors of a block's nodes about its middle; the points are symmetric. */
+  private turnNodes(offsets: Float64Array, delta: number): void {
+    const n = offsets.length;
+    for (let j = 0; j < (n + 1) >> 1; j++) {
+      const angle = TURN * offsets[j]! * delta;
+      cos[j] = cos[n - 1 - j] = Math.cos(angle);
+      sin[j] = Math.sin(angle);
+      sin[n - 1 - j] = -sin[j]!;
+    }
+  }
+
+  at(delta: number): LagSums {
+    const sums = { re: 0, im: 0, re1: 0, im1: 0, re2: 0, im2: 0 };
+    const { blocks } = this.bins;
+    for (let b = this.band.from; b <= this.band.to;) {
+      let end = b;
+      while (end < this.band.to && blocks[end + 1]!.size === blocks[b]!.size) end++;
+      this.addOctave(sums, b, end, delta);
+      b = end + 1;
+    }
+    this.addLoose(sums, delta);
+    return sums;
+  }
+
+  /** |Σ q e^{2πikδ}| alone, by half the work. */
+  heightAt(delta: number): number {
+    const { blocks, order } = this.bins;
+    const [xs, ys, cosines, sines] = [wr, wi, cos, sin];
+    const { n, bin } = this.band.loose;
+    let re = 0;
+    let im = 0;
+    let size = 0;
+    for (let b = this.band.from; b <= this.band.to; b++) {
+      const block = blocks[b]!;
+      if (block.size !== size) this.turnNodes(nodeOffsets((size = block.size), order), delta);
+      let x = 0;
+      let y = 0;
+      for (let j = 0; j < block.nodes; j++) {
+        const p = xs[block.offset + j]!;
+        const q = ys[block.offset + j]!;
+        x += p * cosines[j]! - q * sines[j]!;
+        y += p * sines[j]! + q * cosines[j]!;
+      }
+      const angle = TURN * (block.first + (size - 1) / 2) * delta;
+      const c = Math.cos(angle);
+      const s = Math.sin(angle);
+      re += c * x - s * y;
+      im += c * y + s * x;
+    }
+    for (let i = 0; i < n; i++) {
+      const c = Math.cos(TURN * bin[i]! * delta);
+      const s = Math.sin(TURN * bin[i]! * delta);
+      re += lr[i]! * c - li[i]! * s;
+      im += lr[i]! * s + li[i]! * c;
+    }
+    return Math.hypot(re, im);
+  }
+
+  /** Blocks of one size: their nodes turn alike about their middles, and the middles by even steps. */
+  private addOctave(sums: LagSums, from: number, to: number, delta: number): void {
+    const { blocks, order } = this.bins;
+    const [xs, ys, cosines, sines] = [wr, wi, cos, sin];
+    const { size, first, nodes } = blocks[from]!;
+    const offsets = nodeOffsets(size, order);
+    this.turnNodes(offsets, delta);
+    const [stepC, stepS] = [Math.cos(TURN * size * delta), Math.sin(TURN * size * delta)];
+    let middle = first + (size - 1) / 2;
+    let c = Math.cos(TURN * middle * delta);
+    let s = Math.sin(TURN * middle * delta);
+    for (let b = from; b <= to; b++) {
+      const at = blocks[b]!.offset;
+      let r0 = 0;
+      let i0 = 0;
+      let r1 = 0;
+      let i1 = 0;
+      let r2 = 0;
+      let i2 = 0;
+      for (let j = 0; j < nodes; j++) {
+        const x = xs[at + j]!;
+        const y = ys[at + j]!;
+        const k = offsets[j]!;
+        const u = x * cosines[j]! - y * sines[j]!;
+        const v = x * sines[j]! + y * cosines[j]!;
+        r0 += u;
+        i0 += v;
+        r1 += k * u;
+        i1 += k * v;
+        r2 += k * k * u;
+        i2 += k * k * v;
+      }
+      const m1r = middle * r0 + r1;
+      const m1i = middle * i0 + i1;
+      const m2r = middle * (m1r + r1) + r2;
+      const m2i = middle * (m1i + i1) + i2;
+      sums.re += c * r0 - s * i0;
+      sums.im += c * i0 + s * r0;
+      // d/d(2πδ) of e^{2πikδ} is ik e^{2πikδ}.
+      sums.re1 -= c * m1i + s * m1r;
+      sums.im1 += c * m1r - s * m1i;
+      sums.re2 -= c * m2r - s * m2i;
+      sums.im2 -= c * m2i + s * m2r;
+      const next = c * stepC - s * stepS;
+      s = c * stepS + s * stepC;
+      c = next;
+      middle += size;
+    }
+  }
+
+  private addLoose(sums: LagSums, delta: number): void {
+    const { n, bin } = this.band.loose;
+    for (let i = 0; i < n; i++) {
+      const k = bin[i]!;
+      const c = Math.cos(TURN * k * delta);
+      const s = Math.sin(TURN * k * delta);
+      const u = lr[i]! * c - li[i]! * s;
+      const v = lr[i]! * s + li[i]! * c;
+      sums.re += u;
+      sums.im += v;
+      sums.re1 -= k * v;
+      sums.im1 += k * u;
+      sums.re2 -= k * k * u;
+      sums.im2 -= k * k * v;
+    }
+  }
+}
