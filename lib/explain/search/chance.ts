@@ -1,5 +1,5 @@
 import { drawAt } from './draws';
-import { onScale, reach, type ScaledClaim } from './scaled-claim';
+import { onScale, reach, uncertaintyBeside, type ScaledClaim } from './scaled-claim';
 import { drawn, lawAt, type UnexplainedLaw } from './unexplained';
 
 /** Of a long claim only the points that tell most are asked: a decoy fits fewer points no worse, so that a chance can only come out too large. */
@@ -11,6 +11,7 @@ export interface Decoys {
   readonly count: number;
   /** Points that are asked, the most telling first, and a row of values for each decoy. */
   readonly points: readonly number[];
+  readonly laws: readonly UnexplainedLaw[];
   readonly values: Float64Array;
 }
 
@@ -18,6 +19,17 @@ export interface Decoys {
 function share(scaled: ScaledClaim, law: UnexplainedLaw, i: number): number {
   const { scale } = scaled.claim;
   return reach(scaled, i, scaled.declared[i]!) / Math.abs(onScale(scale, drawn(law, 0.95)) - onScale(scale, drawn(law, 0.05)));
+}
+
+/**
+ * T + U where a decoy meets a reading. A tolerance may be a share of the number claimed, so that a larger decoy would
+ * have brought a larger one; it may be fixed too, so that a smaller decoy keeps the claim's.
+ */
+function decoyReach(scaled: ScaledClaim, { from }: UnexplainedLaw, i: number, y: number): number {
+  const { scale, points } = scaled.claim;
+  const size = Math.abs(points[i]!.claimed - from);
+  const larger = scale === 'ln' || size === 0 ? 1 : Math.max(1, Math.abs(y - from) / size);
+  return Math.max(reach(scaled, i, y), scaled.tolerance[i]! * larger + uncertaintyBeside(scaled, i, y));
 }
 
 export function decoysOf(scaled: ScaledClaim, seed: number, count: number): Decoys {
@@ -28,7 +40,7 @@ export function decoysOf(scaled: ScaledClaim, seed: number, count: number): Deco
   const values = new Float64Array(count * points.length);
   for (let d = 0; d < count; d++)
     for (const [k, i] of points.entries()) values[d * points.length + k] = onScale(claim.scale, drawn(laws[i]!, drawAt(seed, d * laws.length + i)));
-  return { scaled, count, points, values };
+  return { scaled, count, points, laws, values };
 }
 
 /** Readings as the decoys are held against them: sorted by their first number. */
@@ -40,7 +52,7 @@ interface Bank {
   readonly widest: number;
 }
 
-function bankOf({ scaled, points }: Decoys, rows: readonly Float64Array[]): Bank {
+function bankOf({ scaled, points, laws }: Decoys, rows: readonly Float64Array[]): Bank {
   const width = points.length;
   const sorted = [...rows].sort((p, q) => p[points[0]!]! - q[points[0]!]!);
   const values = new Float64Array(sorted.length * width);
@@ -48,7 +60,7 @@ function bankOf({ scaled, points }: Decoys, rows: readonly Float64Array[]): Bank
   for (const [n, row] of sorted.entries())
     for (const [k, i] of points.entries()) {
       values[n * width + k] = row[i]!;
-      reaches[n * width + k] = reach(scaled, i, row[i]!);
+      reaches[n * width + k] = decoyReach(scaled, laws[i]!, i, row[i]!);
     }
   const first = Float64Array.from(sorted, (row) => row[points[0]!]!);
   return { width, values, reaches, first, widest: sorted.reduce((most, _, n) => Math.max(most, reaches[n * width]!), 0) };

@@ -9,8 +9,8 @@ export const lnPrior = ({ flips }: Node): number => flips.reduce((sum, { prior, 
 
 /**
  * The part of T, without digits, that counts as one standard deviation. T says what its author calls agreement, and two
- * careful computations lie well inside it: at a third the edge of a fit is three deviations away. At a half, readings of
- * greater weight come before the true one where their numbers are alike (see the decision on how readings are judged).
+ * careful computations lie well inside it: at a third the edge of a fit is three deviations away. Between a twelfth and a
+ * half the calibration hardly moves (the planted reading comes first in 96 to 98 % of claims of several points).
  */
 const OF_TOLERANCE = 1 / 3;
 /** U belongs to one set of files and moves all points together, but not only so: half of its square is common. */

@@ -59,10 +59,3 @@ function chancePart({ readings, tried, chance, standing }: Facts): string {
   const often = `a fit as good would arise by chance in ${percentage(chance)} of claims`;
   return `${one} of ${tried} tried; ${often}${standing === 'coincidence' ? ', and this one may be a coincidence' : ''}.`;
 }
-
-/** What to say where nothing fits. */
-export function noneSentence(tried: number, failed: number): string {
-  if (tried === 0) return 'No other reading applies to this claim.';
-  const without = failed === 0 ? '' : ` ${capital(countWord(failed))} of them gave no number.`;
-  return `${tried === 1 ? 'The one reading tried does' : `None of the ${tried} readings tried does`} give the claimed numbers.${without}`.replace('does give', tried === 1 ? 'does not give' : 'gives');
-}

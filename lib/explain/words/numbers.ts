@@ -21,11 +21,14 @@ function toPlace(value: number, place: number): string {
   return `${minus((value / 10 ** power).toFixed(Math.min(15, Math.max(0, power - place))))} × ${powerOfTen(power)}`;
 }
 
+/** Beside a plain number a bar stays plain a little longer: it stands under the same decimals. */
+const LEAST_PLAIN_BAR = 1e-4;
+
 /** `0.91854 ± 0.00090`; what has no uncertainty says so. */
 export function measuredNumber(value: number, uncertainty: number | null, unit = ''): string {
   if (uncertainty === null || !(uncertainty > 0) || !Number.isFinite(uncertainty)) return withUnit(`${plainNumber(value)}${uncertainty === 0 ? '' : ' ± unknown'}`, unit);
   const { text, last } = roundedUp(uncertainty);
-  if (isPlain(value) && isPlain(text)) return withUnit(`${toPlace(value, last)} ± ${toPlace(text, last)}`, unit);
+  if (isPlain(value) && text >= LEAST_PLAIN_BAR) return withUnit(`${toPlace(value, last)} ± ${text.toFixed(Math.min(20, Math.max(0, -last)))}`, unit);
   if (isPlain(value)) return withUnit(`${toPlace(value, last)} ± ${toPlace(text, exponentOf(text) - 1)}`, unit);
   const power = exponentOf(value);
   const places = Math.min(15, Math.max(0, power - last));
