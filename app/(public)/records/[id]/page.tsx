@@ -1,4 +1,5 @@
-import type { Metadata } from 'next';
+import type { Metadata, Route } from 'next';
+import Link from 'next/link';
 import { cache } from 'react';
 import { RecordPage } from '@/app/_ui/claim/record-page';
 import { recordAsView } from '@/app/views/record-as-view';
@@ -34,6 +35,12 @@ async function loadBehind(actor: Actor, submissionId: string, revision: number) 
   return lodged.ok ? lodged.value : null;
 }
 
+/** A visitor comes back to the very claim. */
+const signInToVary = (id: string) =>
+  function action(claimId: string) {
+    return <Link href={`/sign-in?next=${encodeURIComponent(`/records/${id}?vary=${encodeURIComponent(claimId)}`)}` as Route} className="inline-flex min-h-8 items-center text-ui">Sign in to vary a setting</Link>;
+  };
+
 /** Signed-in readers vary the official run of the revision that was entered. */
 async function variationsOf(actor: Actor, lodged: LodgedView | null) {
   const list = lodged?.may.vary && isSignedIn(actor) ? await listVariations(actor, lodged.id) : null;
@@ -47,7 +54,8 @@ export default async function PublishedRecordPage({ params, searchParams }: Reco
   const actor = await loadActor();
   const lodged = await loadBehind(actor, record.submissionId, record.document.revision);
   const variations = await variationsOf(actor, lodged);
-  const action = lodged && variations ? variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result: lodged.run?.state === 'measured' ? lodged.run.result : null, variations, asked }) : undefined;
+  const varied = lodged && variations && variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result: lodged.run?.state === 'measured' ? lodged.run.result : null, variations, asked });
+  const action = varied ?? (isSignedIn(actor) ? undefined : signInToVary(id));
   const slots = { actions: <RecordActions record={record} />, aside: <BadgeCard record={record} />, ...(action && { action }) };
   return <RecordPage view={{ ...recordAsView(record, lodged), address: `${record.document.domain}/records/${record.id}` }} trail={{ href: '/register', label: 'Register' }} slots={slots} open={asked ? [asked.claimId] : undefined} />;
 }
