@@ -1,5 +1,6 @@
 import { describe } from 'vitest';
 import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
+import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
 import { goldenChecks, type GoldenCheck } from './golden-check';
 
 type Row = readonly [id: string, source: string, points: readonly (readonly [fHz: number, value: number])[], relative: number];
@@ -78,6 +79,22 @@ describe('published noise curves, power density', () => {
       (psd) => psd,
     ),
   );
+});
+
+/** Curves that are not built in come as tables: between their points the engine's rule (ln S linear in ln f) must give the form they were taken from. */
+function fromTable(psd: (f: number) => number, fHz: number): number {
+  const f = Float64Array.from({ length: 100_001 }, (_, i) => 12 * 200 ** (i / 100_000));
+  const read = tabulatedCurve({ name: 'closed form', f, values: f.map(psd), meaning: 'psd', sided: 'one' });
+  return read.ok ? read.value.curve.psd(fHz) : Number.NaN;
+}
+const cutlerFlanagan = (f: number): number => 3e-48 * ((70 / f) ** 4 + 2 * (1 + (f / 70) ** 2));
+const firstRun = (f: number): number => (1e-22 * (18 / (0.1 + f)) ** 2) ** 2 + 0.7e-23 ** 2 + ((4e-23 * f) / 2000) ** 2;
+const tables: readonly (readonly [id: string, psd: (f: number) => number, required: GoldenCheck['required'], source: string, points: readonly (readonly [number, number])[]])[] = [
+  ['A6', cutlerFlanagan, 'from memory', 'Cutler & Flanagan 1994, PRD 49 2658, Eq. (2.1)', [[20, 4.566772959e-46], [70, 1.5e-47], [300, 1.162129742e-46]]],
+  ['A7', firstRun, 'published', 'form in the event tutorial of the open science centre', [[50, 2.166245989e-46], [100, 6.345571437e-47], [1000, 4.490010493e-46]]],
+];
+describe('published noise curves that come as tables', () => {
+  goldenChecks(tables.flatMap(([id, psd, required, source, points]) => points.map(([fHz, value]) => ({ id, what: `S(f) in 1/Hz at ${fHz} Hz`, required, source, value, relative: 1e-9, compute: () => fromTable(psd, fHz) }))));
 });
 
 describe('published noise curves, amplitude density', () => {

@@ -10,22 +10,8 @@ import { snr } from '@/lib/engine/quantities/snr';
 import { volumeRatio } from '@/lib/engine/quantities/volume-ratio';
 import type { MeasureRequest, Quantity } from '@/lib/engine/contract/quantity';
 import type { Waveform } from '@/lib/engine/contract/waveform';
-import { C_M_PER_S, MPC_M, MSUN_S } from '@/lib/engine/units/constants';
-import { frequencySide } from './signals';
-
-/** Post-Newtonian binaries in the stationary-phase approximation, at 1 Mpc, optimally placed. */
-const lastStableOrbitHz = (totalMsun: number): number => 1 / (6 ** 1.5 * Math.PI * totalMsun * MSUN_S);
-const chirpMassS = (m1: number, m2: number): number => ((m1 * m2) ** 0.6 / (m1 + m2) ** 0.2) * MSUN_S;
-
-function chirp(mcS: number, ownMassMsun: number, fromHz: number, toHz: number, n: number, phase: (f: number) => number): Waveform {
-  const a = (Math.sqrt(5 / 24) * Math.PI ** (-2 / 3) * mcS ** (5 / 6) * C_M_PER_S) / MPC_M;
-  const { waveform } = frequencySide(fromHz, toHz, n, (f) => {
-    const size = a * f ** (-7 / 6);
-    return { plus: size * Math.cos(phase(f)), plusIm: size * Math.sin(phase(f)), cross: 0, crossIm: 0 };
-  });
-  const content = waveform.content.kind === 'line-of-sight' ? { ...waveform.content, cross: null, crossIm: null } : waveform.content;
-  return { ...waveform, content, ownTotalMassMsun: ownMassMsun, ownDistanceMpc: 1 };
-}
+import { MSUN_S } from '@/lib/engine/units/constants';
+import { chirp, chirpMassS, horizonOverRange, lastStableOrbitHz, neutronStars } from './chirps';
 
 function measured(quantity: Quantity, of: MeasureRequest['inputs']['of'], noise: NoiseCurve, settings: MeasureRequest['settings']) {
   const request: MeasureRequest = { claimId: 'G', inputs: { of, noise }, settings, over: null, claimed: [null], withFigures: false };
@@ -45,12 +31,8 @@ function fileCurve(name: string): NoiseCurve {
   return curve.value.curve;
 }
 
-const neutronStars = (fLowHz: number): Waveform => chirp(chirpMassS(1.4, 1.4), 2.8, fLowHz / 1.5, 2400, 3000, () => 0);
 const horizon = (curve: string, fLowHz: number): number =>
   measured(horizonDistance, { a: neutronStars(fLowHz) }, fileCurve(curve), { fLowHz, fHighHz: lastStableOrbitHz(2.8), massFrame: 'detector' }).value!;
-/** Horizon over range, averaged over sky and orientation (B4). */
-const horizonOverRange = 2.2648;
-
 describe.runIf(isThere)(isThere ? 'how far 1.4 + 1.4 M☉ are heard' : `how far 1.4 + 1.4 M☉ are heard (skipped: ${data} is missing)`, () => {
   it.each([
     ['B6', 'T0900288_ZERO_DET_high_P.txt', 10, 445, 0.002],
@@ -124,10 +106,12 @@ describe('stationary-phase chirps', () => {
     for (const route of [routes.A, routes.B]) expect(route).toAgreeWith(value, { relative: 2e-4 });
   });
 
-  it('B4, B5: averages over sky and orientation are 2/5 of the optimal loudness, and its cube mean 1/2.2648 (required: published; Finn & Chernoff 1993)', () => {
+  it('B4, B5, T8: averages over sky and orientation are 2/5 of the optimal loudness, and its cube mean 1/2.2648 (required: published; Finn & Chernoff 1993)', () => {
     const modes: Waveform = modesOf(of(tenTen));
     const settings = { ...band };
     const optimal = measured(snr, { a: modes }, early, settings).value!;
+    // ρ_c² = 2ρ₊² face-on, so 1/5 of it is 2/5 of ρ₊² (T8: ⟨F₊²⟩ = 1/5).
+    expect((measured(snr, { a: modes }, early, { ...settings, average: 'sky' }).value! / optimal) ** 2 / 2).toAgreeWith(0.2, { relative: 1e-6 });
     expect(measured(snr, { a: modes }, early, { ...settings, average: 'sky-orientation' }).value! / optimal).toAgreeWith(0.4, { relative: 1e-6 });
     expect(optimal / measured(snr, { a: modes }, early, { ...settings, average: 'volume' }).value!).toAgreeWith(horizonOverRange, { relative: 1e-4 });
   });
@@ -139,6 +123,16 @@ describe('stationary-phase chirps', () => {
     const { value, components } = measured(volumeRatio, { a: loud, b: halved }, early, band);
     expect(value).toAgreeWith(8, { relative: 1e-12 });
     expect(components?.['ratio']).toAgreeWith(2, { relative: 1e-12 });
+  });
+
+  it.each([
+    [0.97, 0.087327],
+    [0.965, 0.101367875],
+  ])('C5: a filter that keeps %d of the loudness loses %d of the events (required: from memory; Owen 1996, Lindblom, Owen & Brown 2008, arXiv:0809.3844)', (kept, lost) => {
+    const loud = of(tenTen);
+    const { content } = loud;
+    const heard: Waveform = { ...loud, content: content.kind === 'line-of-sight' ? { ...content, plus: content.plus.map((x) => kept * x), plusIm: content.plusIm!.map((x) => kept * x) } : content };
+    expect(1 - measured(volumeRatio, { a: heard, b: loud }, early, band).value!).toAgreeWith(lost, { relative: 1e-9 });
   });
 
   it.each([

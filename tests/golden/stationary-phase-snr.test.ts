@@ -71,7 +71,7 @@ describe.each([routeA, routeB])('stationary-phase loudness, route $name', (route
   goldenChecks([
     {
       id: 'B2',
-      what: '1.4 + 1.4 M☉ at 100 Mpc in white noise of 1e-46/Hz, 30–1000 Hz',
+      what: 'T3: 1.4 + 1.4 M☉ at 100 Mpc in white noise of 1e-46/Hz, 30–1000 Hz',
       required: 'published',
       source: 'closed form ρ² = 3A²(f₁^(−4/3) − f₂^(−4/3))/S (also T3)',
       value: 16.43761138,
