@@ -8,8 +8,8 @@ export interface Reference {
   readonly close: () => void;
 }
 
-export function openReference(): Reference {
-  const script = fileURLToPath(new URL('reference.py', import.meta.url));
+export function openReference(name = 'reference.py'): Reference {
+  const script = fileURLToPath(new URL(name, import.meta.url));
   const child = spawn('/usr/bin/python3', [script], { stdio: ['pipe', 'pipe', 'inherit'] });
   const answers = createInterface({ input: child.stdout })[Symbol.asyncIterator]();
   const ask = async <T>(request: object): Promise<T> => {

@@ -1,6 +1,6 @@
+import type { Mode } from '../contract/waveform';
 import { quadratureWeights } from './local-calculus';
-import { weightedSum } from './mode-products';
-import { squared, type SampledRadiation } from './news-on-samples';
+import type { SampledRadiation } from './news-on-samples';
 
 export interface ModeEnergy {
   readonly l: number;
@@ -21,7 +21,13 @@ export const ENERGY_FACTOR = 1 / (16 * Math.PI);
  */
 export function energyOnSamples({ axis, isEven, news }: SampledRadiation, startM: number, order: 4 | 6 | 8 = 8): ModeEnergy[] {
   const weights = quadratureWeights(axis, startM, order, isEven);
-  return news.map((mode) => ({ l: mode.l, m: mode.m, energy: ENERGY_FACTOR * weightedSum(weights, squared(mode)) }));
+  return news.map((mode) => ({ l: mode.l, m: mode.m, energy: ENERGY_FACTOR * weightedPower(weights, mode) }));
+}
+
+function weightedPower(weights: Float64Array, { re, im }: Mode): number {
+  let sum = 0;
+  for (let i = 0; i < weights.length; i++) sum += weights[i]! * (re[i]! * re[i]! + im[i]! * im[i]!);
+  return sum;
 }
 
 export const totalEnergy = (modes: readonly ModeEnergy[]): number => modes.reduce((sum, { energy }) => sum + energy, 0);

@@ -1,6 +1,7 @@
 import type { Figure } from '../contract/measurement';
 import { ENERGY_FACTOR } from './energy-on-samples';
-import { squared, type SampledRadiation } from './news-on-samples';
+import { powerInBlocks } from './flux-blocks';
+import type { SampledRadiation } from './news-on-samples';
 
 /** More points than a screen is wide are not seen. */
 const MOST_POINTS = 1200;
@@ -61,9 +62,7 @@ export function fluxFigure(title: string, axis: Float64Array, startM: number, fl
  * Source: Q12.
  */
 export function energyFlux({ axis, news }: SampledRadiation): Float64Array {
-  const flux = new Float64Array(axis.length);
-  for (const mode of news) squared(mode).forEach((power, i) => (flux[i] = flux[i]! + ENERGY_FACTOR * power));
-  return flux;
+  return powerInBlocks(news, ENERGY_FACTOR, axis.length);
 }
 
 /** Flux and running energy against time, from the start of the integral. */

@@ -30,6 +30,41 @@ function stencilAt(i: number, n: number, wanted: number): readonly [from: number
   return [Math.max(0, Math.min(i - ((oneSided - 1) >> 1), n - oneSided)), oneSided];
 }
 
+function gainOf(slope: Float64Array, count: number): number {
+  let gain = 0;
+  for (let j = 0; j < count; j++) gain += slope[j]! * slope[j]!;
+  return Math.sqrt(gain);
+}
+
+/** Four samples share each coefficient while it is at hand; every sum is taken in the stencil's order. */
+function slideStencil(slope: Float64Array, points: number, samples: Float64Array, out: Float64Array, first: number, past: number): void {
+  const half = (points - 1) / 2;
+  let i = first;
+  for (; i + 3 < past; i += 4) {
+    const from = i - half;
+    let a = 0;
+    let b = 0;
+    let c = 0;
+    let d = 0;
+    for (let j = 0; j < points; j++) {
+      const w = slope[j]!;
+      a += w * samples[from + j]!;
+      b += w * samples[from + j + 1]!;
+      c += w * samples[from + j + 2]!;
+      d += w * samples[from + j + 3]!;
+    }
+    out[i] = a;
+    out[i + 1] = b;
+    out[i + 2] = c;
+    out[i + 3] = d;
+  }
+  for (; i < past; i++) {
+    let sum = 0;
+    for (let j = 0; j < points; j++) sum += slope[j]! * samples[i - half + j]!;
+    out[i] = sum;
+  }
+}
+
 /**
  * First derivatives of several series at their own samples, by local polynomials.
  * Shape:  series parallel to the axis; the same arrays come back differentiated.
@@ -44,16 +79,18 @@ export function derivativesAtSamples(axis: Float64Array, series: readonly Float6
   const noiseGain = new Float64Array(n);
   const value = new Float64Array(points);
   const slope = new Float64Array(points);
-  let inside = false;
-  for (let i = 0; i < n; i++) {
+  const half = (points - 1) / 2;
+  // On equal steps one centred stencil serves all.
+  const [first, past] = isEven && n > 2 * half ? [half, n - half] : [n, n];
+  if (past > first) {
+    fornberg(axis[first]!, axis, 0, points, value, slope);
+    noiseGain.fill(gainOf(slope, points), first, past);
+    series.forEach((samples, s) => slideStencil(slope, points, samples, slopes[s]!, first, past));
+  }
+  for (let i = 0; i < n; i = i + 1 === first ? past : i + 1) {
     const [from, count] = stencilAt(i, n, points);
-    const centred = isEven && count === points && 2 * (i - from) === count - 1;
-    // On equal steps one centred stencil serves all.
-    if (!(centred && inside)) fornberg(axis[i]!, axis, from, count, value, slope);
-    inside = centred;
-    let gain = 0;
-    for (let j = 0; j < count; j++) gain += slope[j]! * slope[j]!;
-    noiseGain[i] = Math.sqrt(gain);
+    fornberg(axis[i]!, axis, from, count, value, slope);
+    noiseGain[i] = gainOf(slope, count);
     for (let s = 0; s < series.length; s++) {
       const samples = series[s]!;
       let sum = 0;

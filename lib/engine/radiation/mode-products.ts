@@ -1,4 +1,5 @@
 import type { Mode } from '../contract/waveform';
+import { ratesInBlocks } from './flux-blocks';
 
 /**
  * What the flux of a mode set is made of: products of neighbouring modes. A rate is
@@ -36,16 +37,7 @@ export function indexOfModes(modes: readonly Pick<Mode, 'l' | 'm'>[]): ModeIndex
  * Source: definition.
  */
 export function rateOf(products: readonly ModeProduct[], left: readonly Pick<Mode, 're' | 'im'>[], right: readonly Pick<Mode, 're' | 'im'>[], samples: number): Float64Array {
-  const rate = new Float64Array(samples);
-  for (const { a, b, re, im } of products) {
-    const [x, y] = [left[a]!, right[b]!];
-    for (let i = 0; i < samples; i++) {
-      const real = x.re[i]! * y.re[i]! + x.im[i]! * y.im[i]!;
-      const imaginary = x.im[i]! * y.re[i]! - x.re[i]! * y.im[i]!;
-      rate[i] = rate[i]! + re * real - im * imaginary;
-    }
-  }
-  return rate;
+  return ratesInBlocks([products], left, right, samples)[0]!;
 }
 
 /** Σ w·values. */

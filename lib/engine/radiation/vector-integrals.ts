@@ -1,13 +1,12 @@
 import type { Mode } from '../contract/waveform';
 import { quadratureWeights } from './local-calculus';
-import { rateOf, weightedSum, type ModeProduct } from './mode-products';
+import { ratesInBlocks } from './flux-blocks';
+import { weightedSum, type ModeProduct } from './mode-products';
 import type { Components } from './momentum-products';
 import type { SampledRadiation } from './news-on-samples';
 import type { EllShare } from './radiation-recipe';
 
 export type Vector = readonly [x: number, y: number, z: number];
-
-const mapped = (components: Components, each: (products: readonly ModeProduct[]) => number): Vector => [each(components[0]), each(components[1]), each(components[2])];
 
 /** H where the quantity needs it, else Ḣ: the left factor of a product. */
 const leftOf = ({ strain, news }: SampledRadiation): readonly Mode[] => strain ?? news;
@@ -21,14 +20,15 @@ const leftOf = ({ strain, news }: SampledRadiation): readonly Mode[] => strain ?
  * Source: Q13, Q14.
  */
 export function vectorOnSamples(components: Components, radiation: SampledRadiation, startM: number, order: 6 | 8): Vector {
-  const { axis, isEven, news } = radiation;
+  const { axis, isEven } = radiation;
   const weights = quadratureWeights(axis, startM, order, isEven);
-  return mapped(components, (products) => weightedSum(weights, rateOf(products, leftOf(radiation), news, axis.length)));
+  const [x, y, z] = ratesOf(components, radiation);
+  return [weightedSum(weights, x!), weightedSum(weights, y!), weightedSum(weights, z!)];
 }
 
 /** The rates themselves, for the eye. */
 export const ratesOf = (components: Components, radiation: SampledRadiation): readonly Float64Array[] =>
-  components.map((products) => rateOf(products, leftOf(radiation), radiation.news, radiation.axis.length));
+  ratesInBlocks(components, leftOf(radiation), radiation.news, radiation.axis.length);
 
 /**
  * What the highest ℓ of each product adds, as the length of a vector.
