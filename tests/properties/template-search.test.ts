@@ -1,6 +1,4 @@
 import { describe, expect, it } from 'vitest';
-import { conditionWaveform } from '@/lib/engine/conditioning/condition-waveform';
-import type { MaximiseOver } from '@/lib/engine/contract/settings';
 import type { Side, TemplateRequest } from '@/lib/engine/contract/route';
 import { hillsOf, pairRequest } from '@/lib/engine/routes/a/best-templates';
 import { JointSearch } from '@/lib/engine/routes/a/joint-search';
@@ -8,39 +6,10 @@ import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import { createRouteA } from '@/lib/engine/routes/a/route-a';
 import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 import { routeB } from '@/lib/engine/routes/b/route-b';
-import { MSUN_S } from '@/lib/engine/units/constants';
-import { binary, curve, inMasses } from '../support/detector-claims';
 import { seededRandom } from '../support/seeded-random';
+import { drawnBy, requestOf, rescale, threeModes } from '../support/template-banks';
 
-const random = seededRandom(11);
-const drawn = (massMsun: number): Side => {
-  const spin = 1.6 * random() - 0.8;
-  const c = conditionWaveform(binary('drawn', { massRatio: 1 + 2 * random(), chi1z: spin, chi2z: spin, mOmega0: 0.03, stepM: 1, modes: ['22'] }), 'all');
-  return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: massMsun * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
-};
-const rise = (x: number): number => 1 / (1 + Math.exp(-x));
-/** An inspiral that swells late and rings off in three modes: what a scan reads roughly lies a per cent below its match there. */
-function threeModes(stretch: number): Side {
-  const times = Float64Array.from({ length: 1401 }, (_, t) => t);
-  const swept = (t: number): number => 0.05 * (1 - Math.min(t, 1150) / 1256) ** -0.375;
-  const omega = (t: number): number => swept(t) + (0.55 - swept(t)) * rise((t - 1100) / 10);
-  const size = (t: number): number => (0.03 + 0.07 * rise((t - 1000) / 30)) / Math.cosh(Math.max(0, t - 1100) / 11.5);
-  const phases = new Float64Array(times.length);
-  for (let i = 1; i < phases.length; i++) phases[i] = phases[i - 1]! + (omega(i - 1) + 4 * omega(i - 0.5) + omega(i)) / 6;
-  const phase = (t: number): number => phases[t]!;
-  const mode = (l: number, m: number, share: number) => ({ l, m, re: times.map((t) => share * size(t) * Math.cos((m * phase(t)) / 2)), im: times.map((t) => -share * size(t) * Math.sin((m * phase(t)) / 2)) });
-  const c = conditionWaveform(inMasses('swelling', times.map((t) => stretch * t), [mode(2, 2, 1), mode(2, 1, 0.1), mode(3, 3, 0.15)], { negativeM: 'mirror' }), 'all');
-  return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: 100 * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
-}
-const rescale = (side: Side, factor: number): Side => ({ ...side, secondsPerUnit: side.secondsPerUnit * factor });
-const requestOf = (templates: readonly Side[], fLowHz: number, range: readonly [number, number]): TemplateRequest => ({
-  templates,
-  band: { noise: curve('G2'), fLowHz, fHighHz: 700 },
-  response: 'plus',
-  maximise: ['time', 'phase', 'templateMass'] satisfies MaximiseOver[],
-  templateMassRange: range,
-  rescale,
-});
+const drawn = drawnBy(seededRandom(11));
 
 /** Every template at every factor, the best three of each refined: no glance, no hill left out. */
 function byFullSearch(a: Side, request: TemplateRequest): { index: number; match: number; massFactor: number } {

@@ -176,8 +176,9 @@ export function bestPlaces(signals: readonly Side[], request: RealRequest, conte
   const shared = { factors, request, ...context };
   const bank = templateBank({ signals, ...shared });
   return signals.map((a, s) => {
-    request.onStep?.(s / signals.length);
-    return bestOf(scanTemplates(bank, a, { ...shared, everywhere }), a, request, factors, context);
+    const onStep = (): void => request.onStep?.((1 + s / signals.length) / 2);
+    onStep();
+    return bestOf(scanTemplates(bank, a, { ...shared, everywhere, onStep }), a, request, factors, context);
   });
 }
 

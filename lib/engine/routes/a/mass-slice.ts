@@ -11,7 +11,7 @@ export interface MassSlice {
   readonly im: Float64Array;
   /** Σ V|a|². */
   readonly norm: number;
-  /** Bins that hold nearly all of it, and what the others hold. */
+  /** Bins that hold nearly all of it, and Σ |V| |a|² of the others. */
   readonly coreFrom: number;
   readonly coreTo: number;
   readonly outside: number;
@@ -63,8 +63,10 @@ export function massSlice(source: SignalSource, dF: number, { first, values }: P
     inside += powers[k]!;
     moment += k * powers[k]!;
   }
+  // End weights change their sign, so that what lies outside is summed by size.
+  let outside = 0;
+  for (let k = 0; k < n; k++) if (k < coreFrom || k >= coreTo) outside += Math.abs(powers[k]!);
   const mean = inside > 0 ? Math.round(moment / inside) : 0;
   for (let k = coreFrom; k < coreTo; k++) square += (k - mean) * (k - mean) * powers[k]!;
-  const outside = Math.max(0, norm - inside);
   return { weights: { first, values }, first: first + from, re, im, norm, coreFrom: first + coreFrom, coreTo: first + coreTo, outside, middle: first + mean, spread: square };
 }

@@ -12,8 +12,9 @@ export interface MatchBounds {
 const LAGS_PER_SPREAD = 5;
 const LEAST_LAGS = 64;
 const TURN = 2 * Math.PI;
-/** A Newton step shorter than this share of a lag leaves 1e-5 of the value. */
-const CLOSE = 0.04;
+/** A Newton step shorter than this share of a lag leaves less than 1e-6 of the value. */
+const CLOSE = 0.015;
+const MOST_STEPS = 4;
 const ROOM = 2e-5;
 
 interface Scratch {
@@ -31,11 +32,18 @@ function scratchOf(size: number): Scratch {
   return made;
 }
 
-/** Σ V|b|² of some bins, in bins of the weights. */
-function powerOf(weights: Float64Array, power: Float64Array, shift: number, from: number, to: number): number {
-  let sum = 0;
-  for (let i = from; i < to; i++) sum += weights[i]! * power[i - shift]!;
-  return sum;
+/** Σ V|b|² of bins outside the core, and Σ |V| |b|²: end weights change their sign. */
+const rim = { signed: 0, sized: 0 };
+function addRim(weights: Float64Array, power: Float64Array, shift: number, from: number, to: number): void {
+  let signed = 0;
+  let sized = 0;
+  for (let i = from; i < to; i++) {
+    const v = weights[i]! * power[i - shift]!;
+    signed += v;
+    sized += Math.abs(v);
+  }
+  rim.signed += signed;
+  rim.sized += sized;
 }
 
 let product = new Float64Array(0);
@@ -137,8 +145,16 @@ function topsOf(heights: Float64Array, n: number, unseen: number): { readonly to
   const after = heights[(at + 1) % size]!;
   const bend = before - 2 * most + after;
   const lag = (at + (bend < 0 ? Math.max(-0.5, Math.min(0.5, (before - after) / (2 * bend))) : 0)) / size;
-  let found = stepFrom(product, n, lag);
-  if (Math.abs(found.step) * size > CLOSE && Math.abs(found.step) * size < 1) found = stepFrom(product, n, lag + found.step);
+  const hill = (): { readonly height: number; readonly step: number } => {
+    let at = lag;
+    for (let round = 1; ; round++) {
+      const found = stepFrom(product, n, at);
+      const lags = Math.abs(found.step) * size;
+      if (lags < CLOSE || !(lags < 1) || round === MOST_STEPS) return found;
+      at += found.step;
+    }
+  };
+  const found = hill();
   const top = Math.max(most, Math.abs(found.step) * size < 1 ? found.height : 0);
   // A lag that is not beside the highest one counts where it could hide more.
   const least = Math.max(0, Math.sqrt(top) - unseen) ** 2;
@@ -154,7 +170,7 @@ function topsOf(heights: Float64Array, n: number, unseen: number): { readonly to
  * Shape:  one slice of the signal, one template on the same bins.
  * Units:  dimensionless.
  * Error:  between the lags of the transform the modulus rises by ½ (δω)² Σ (ω − ω₀)² |c| at most, and that sum by no more than
- *         Cauchy and Schwarz allow; bins outside the core likewise. The highest hill is climbed, so that the bounds lie some 1e-4 apart.
+ *         Cauchy and Schwarz allow; bins outside the core likewise. The highest hill is climbed, so that the bounds mostly lie some 1e-4 apart.
  * Fails:  never; a side without power gives 0.
  * Source: Taylor's remainder about the maximum; our assembly.
  */
@@ -166,13 +182,17 @@ export function matchBounds(slice: MassSlice, template: PackedSide): MatchBounds
   const n = Math.max(0, Math.min(slice.coreTo, high) - from);
   fillProduct(slice, template, from, n);
   const shift = template.first - first;
-  const outside = powerOf(values, template.power, shift, low - first, from - first) + powerOf(values, template.power, shift, from + n - first, high - first);
+  rim.signed = 0;
+  rim.sized = 0;
+  addRim(values, template.power, shift, low - first, from - first);
+  addRim(values, template.power, shift, from + n - first, high - first);
   const { inside, spread } = core;
-  const norms = Math.sqrt(slice.norm * (inside + outside));
+  const norm = inside + rim.signed;
+  const norms = Math.sqrt(slice.norm * norm);
   if (!(norms > 0)) return { least: 0, most: 0 };
-  const rest = Math.sqrt(slice.outside * Math.max(0, outside)) / norms + ROOM;
+  const rest = Math.sqrt(slice.outside * rim.sized) / norms + ROOM;
   if (n === 0) return { least: 0, most: Math.min(1, rest) };
-  const width = Math.sqrt(Math.max(slice.spread / slice.norm, spread / (inside + outside)));
+  const width = Math.sqrt(Math.max(slice.spread / slice.norm, spread / norm));
   const size = Math.min(powerOfTwoFrom(2 * n), powerOfTwoFrom(Math.max(LEAST_LAGS, LAGS_PER_SPREAD * width)));
   const half = Math.PI / size;
   const unseen = (half * half * Math.sqrt(slice.spread * spread)) / 2;

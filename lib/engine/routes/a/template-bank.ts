@@ -49,7 +49,8 @@ export function templateBank({ signals, factors, request, store, numerics }: Ban
   const tail = tailWeights(lowest, highest, factors, weightsFor(highest));
   const templates: PackedSide[] = [];
   const paths: Float64Array[] = [];
-  for (const side of sides) {
+  for (const [i, side] of sides.entries()) {
+    request.onStep?.(i / (2 * sides.length));
     const dF = Number((dfHz(1) * side.secondsPerUnit).toPrecision(14));
     const { slopeRe, slopeIm, ...packed } = slopedSide(responseSeries(side, dF, { response, store, numerics }), dF, lowest, tail);
     templates.push(packed);

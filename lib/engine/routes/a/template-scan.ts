@@ -19,6 +19,8 @@ export interface TemplateScan {
 /** Numbers of one signal that are kept at several masses: 32 MB. */
 const MOST_KEPT = 1 << 22;
 
+const LOOKS_A_STEP = 256;
+
 function normOf({ first: lowest, values }: MassSlice['weights'], { first, power }: PackedSide): number {
   const from = Math.max(first, lowest);
   const to = Math.min(first + power.length, lowest + values.length);
@@ -75,6 +77,8 @@ export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }
 export interface ScanRequest extends Omit<BankRequest, 'signals'> {
   /** Look at every template at every factor, whatever the bounds say. */
   readonly everywhere?: boolean;
+  /** Called every so many looks. */
+  readonly onStep?: () => void;
 }
 
 /**
@@ -85,11 +89,15 @@ export interface ScanRequest extends Omit<BankRequest, 'signals'> {
  * Fails:  never; sides without power in the band give 0.
  * Source: engine design: a mass only stretches the frequencies; `promising` for what is left out.
  */
-export function scanTemplates(bank: TemplateBank, a: Side, { everywhere = false, ...shared }: ScanRequest): TemplateScan {
+export function scanTemplates(bank: TemplateBank, a: Side, { everywhere = false, onStep, ...shared }: ScanRequest): TemplateScan {
   const { factors } = shared;
   const sliceAt = slicer(bank, a, shared);
   const buffers: Buffers = { re: new Float64Array(0), im: new Float64Array(0) };
-  const look = (t: number, g: number): MatchBounds => matchBounds(sliceAt(factors[g]!), bank.templates[t]!);
+  let looks = 0;
+  const look = (t: number, g: number): MatchBounds => {
+    if (++looks % LOOKS_A_STEP === 0) onStep?.();
+    return matchBounds(sliceAt(factors[g]!), bank.templates[t]!);
+  };
   const rough = promising(bank.paths, look, everywhere);
   const sharp = (t: number, factor: number): number => {
     const product = productOf(sliceAt(factor), bank.templates[t]!, buffers);
