@@ -60,7 +60,7 @@ const few = 3;
 /** A noise curve stands behind half of all quantities: long lists open on demand. */
 function Affected({ id, affects }: Pick<Convention, 'id' | 'affects'>) {
   const list = <ul>{affects.map((quantity) => <li key={quantity}><Link href={`/methods/${quantity}` as Route} className="inline-flex min-h-8 items-center">{quantityWord(quantity)}</Link></li>)}</ul>;
-  return affects.length <= few ? list : <Disclosure summary={<span>{affects.length} quantities<span className="sr-only"> that {id} affects</span></span>}>{list}</Disclosure>;
+  return affects.length <= few ? list : <Disclosure summary={<span className="relative">{affects.length} quantities<span className="sr-only"> that {id} affects</span></span>}>{list}</Disclosure>;
 }
 
 const SaidBy = ({ convention: { settings } }: { readonly convention: Convention }) =>
