@@ -29,8 +29,8 @@ function waveformOf(name: string, axis: Float64Array, parameters: Chirp): Wavefo
   };
 }
 
-export function makePair(): readonly [Waveform, Waveform] {
-  const axis = unevenTimes(samples);
+export function makePair(n = samples): readonly [Waveform, Waveform] {
+  const axis = unevenTimes(n);
   return [waveformOf('A', axis, pair[0]), waveformOf('B', axis, pair[1])];
 }
 
@@ -50,8 +50,7 @@ const sideOf = (waveform: Waveform, massMsun: number): Side => ({
 });
 
 /** The base: one match a mass by one route, from samples in memory, nothing prepared beforehand. */
-export function sweepBase(route: DetectorRoute, [a, b]: readonly [Waveform, Waveform], at: readonly number[] = masses): number[] {
-  const edges = band();
+export function sweepBase(route: DetectorRoute, [a, b]: readonly [Waveform, Waveform], at: readonly number[] = masses, edges: Band = band()): number[] {
   return at.map(
     (mass) =>
       route.match({

@@ -38,20 +38,18 @@ function cardinalPolynomials(order: number, offset: number): number[][] {
 function buildRule(order: number, offset: number): EdgeRule {
   const polys = cardinalPolynomials(order, offset);
   const constant = polys.map((poly) => poly.reduce((sum, c, i) => sum + c * endMoments[i]!, 0));
-  // ∫ from −δ to 0 of a cardinal polynomial, as a polynomial in −δ.
-  const rising = polys.map((poly) => Float64Array.from(poly, (c, i) => -c / (i + 1)));
+  // ∫ from −δ to 0 of a cardinal polynomial, as a polynomial in −δ; the same power of all of them side by side.
+  const rising = new Float64Array(order * order);
+  polys.forEach((poly, j) => poly.forEach((c, i) => (rising[order * i + j] = -c / (i + 1))));
   const weightsAt = (delta: number, out: Float64Array): void => {
-    for (let j = 0; j < order; j++) {
-      const poly = rising[j]!;
-      let value = 0;
-      for (let i = order - 1; i >= 0; i--) value = (value + poly[i]!) * -delta;
-      out[j] = constant[j]! + value;
-    }
+    for (let j = 0; j < order; j++) out[j] = 0;
+    for (let i = order - 1; i >= 0; i--) for (let j = 0; j < order; j++) out[j] = (out[j]! + rising[order * i + j]!) * -delta;
+    for (let j = 0; j < order; j++) out[j]! += constant[j]!;
   };
   return { order, offset, weightsAt };
 }
 
-const rules = new Map<string, EdgeRule>();
+const rules = new Map<number, EdgeRule>();
 
 /**
  * Fractional end weights: they make a plain sum over samples an integral from an edge that lies between samples.
@@ -62,7 +60,7 @@ const rules = new Map<string, EdgeRule>();
  * Source: Euler–Maclaurin with Bernoulli numbers; derivation here, identity checked on polynomials in the tests.
  */
 export function edgeRule(order: number, offset: number): EdgeRule {
-  const key = `${order},${offset}`;
+  const key = 16 * offset + order;
   const known = rules.get(key);
   if (known) return known;
   const made = buildRule(order, offset);

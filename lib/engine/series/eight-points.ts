@@ -1,4 +1,11 @@
-/** Weights 1/∏(x_a − x_b) of eight neighbouring points, each difference taken once. */
+/**
+ * Weights 1/∏(x_a − x_b) of eight neighbouring points, each difference taken once.
+ * Shape:  points at … at + 7 of x, which rises strictly; eight weights into w.
+ * Units:  those of x to the power −7.
+ * Error:  rounding.
+ * Fails:  never.
+ * Source: barycentric weights, definition.
+ */
 export function weightsOfEight(x: Float64Array, at: number, w: Float64Array): void {
   const a = x[at]!;
   const b = x[at + 1]!;
@@ -55,7 +62,14 @@ export interface EightPoints {
   readonly outSecond: Float64Array;
 }
 
-/** The polynomials through eight points from `at` on, read at t: products from both sides, so that nothing is divided by. */
+/**
+ * The polynomials through eight points from `at` on, read at t: products from both sides, so that nothing is divided by.
+ * Shape:  w as `weightsOfEight` leaves it; one value of each series goes to place k.
+ * Units:  those of the series.
+ * Error:  order 8 in the spacing of the points.
+ * Fails:  never; t may be a point.
+ * Source: Lagrange, first barycentric form, its weights normalised to 1.
+ */
 export function readEight({ axis: x, first: u, second: v, outFirst, outSecond }: EightPoints, at: number, w: Float64Array, t: number, k: number): void {
   const d0 = t - x[at]!;
   const d1 = t - x[at + 1]!;

@@ -17,6 +17,7 @@ export interface Bracket {
 const GRID_SLACK = 0.01;
 const CUT_ROOM = 1.5;
 
+/** The lags of two anchors, each with the larger of both heights; where one did not list a lag, it is at most as high there as what it left out. */
 export function bracketOf(low: LagAnchor, high: LagAnchor): Bracket {
   const listed = [...new Set([...low.heights.keys(), ...high.heights.keys()])];
   const heightAt = (i: number): number => Math.max(low.heights.get(i) ?? low.rest, high.heights.get(i) ?? high.rest);
@@ -30,6 +31,7 @@ export interface BlockPowers {
   readonly b: Float64Array;
 }
 
+/** Sums over bins are sums over nodes: a constant is a polynomial. */
 export function blockPowers({ blocks, run }: CompressedBins): BlockPowers {
   const a = new Float64Array(blocks.length);
   const b = new Float64Array(blocks.length);

@@ -59,7 +59,7 @@ interface BinShare {
 }
 
 /** Places `order` end weights around an edge at f; direction +1 integrates upwards from it, −1 up to it. */
-function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weigh: (bin: number) => number, isKink = false): void {
+function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weigh: (bin: number) => number): void {
   const { range } = b;
   const { closedForm } = b.weigher;
   const place = fHz / range.dfHz;
@@ -73,15 +73,14 @@ function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weig
   const offset =
     direction > 0 ? clamp(centred, low - inside, high - inside - most + 1) : clamp(centred, inside - high, inside - low - most + 1);
   edgeRule(most, offset).weightsAt(Math.abs(inside - place), b.share);
-  const doubtful = !isKink;
   for (let j = 0; j < most; j++) {
     const bin = inside + direction * (offset + j);
     const added = b.share[j]! * weigh(bin);
     if (b.values !== null) b.values[bin - b.first]! += added;
     else b.added.push({ bin, weight: added });
-    if (doubtful) b.doubt.push({ bin, weight: added });
+    b.doubt.push({ bin, weight: added });
   }
-  if (!doubtful || most < 4) return;
+  if (most < 4) return;
   const fewer = most - 2;
   edgeRule(fewer, offset + 1).weightsAt(Math.abs(inside - place), b.share);
   for (let j = 0; j < fewer; j++) {
@@ -99,19 +98,23 @@ function kinkOrder(change: number, order: number): number {
 }
 
 function addKinks(b: Builder): void {
-  const { range, weigher } = b;
+  const { range, weigher, first, last, values } = b;
+  if (values === null) return;
   const { kinksHz } = weigher;
+  const offsetLog = Math.log(range.dfHz);
+  const logs = logBins(last);
   for (let i = weigher.firstKinkAbove(range.fLowHz); i < kinksHz.length && kinksHz[i]! < range.fHighHz; i++) {
     const f = kinksHz[i]!;
     if (f <= range.fLowHz) continue;
     const step = range.dfHz / f;
-    const lnF = Math.log(f);
-    const ratio = (side: 1 | -1): number =>
-      Math.abs(Math.log(weigher.continuedAt(i, side, lnF + step) / weigher.continuedAt(i, side, lnF)));
-    const [above, below] = [ratio(1), ratio(-1)];
-    if ((above + below) * step < LEAST_KINK || above + below === 0) continue;
-    const order = kinkOrder(Math.max(above, below), range.order);
-    addEdge(b, f, 1, order, (bin) => weigher.continuedAt(i, 1, b.logF(bin)) - weigher.continuedAt(i, -1, b.logF(bin)), true);
+    const change = weigher.steepnessAt(i) * step;
+    if (change * step < LEAST_KINK) continue;
+    const most = Math.min(kinkOrder(change, range.order), last - first + 1);
+    const place = f / range.dfHz;
+    const inside = Math.ceil(place);
+    const offset = clamp(-(most >> 1), first - inside, last - inside - most + 1);
+    edgeRule(most, offset).weightsAt(inside - place, b.share);
+    for (let bin = inside + offset, j = 0; j < most; bin++, j++) values[bin - first]! += b.share[j]! * weigher.jumpAt(i, logs[bin]! + offsetLog);
   }
 }
 
