@@ -22,7 +22,13 @@ def noise(f):
     return 1e-49 * (x**-4.14 - 5 * x**-2 + 111 * (1 - x**2 + x**4 / 2) / (1 + x**2 / 2))
 
 
-def sweep(path, n, masses, f_low, f_high):
+def table_noise(table):
+    """A measured curve: ln S linear in ln f between its rows."""
+    log_f, log_s = np.log(table["f"]), np.log(table["psd"])
+    return lambda f: np.exp(np.interp(np.log(f), log_f, log_s))
+
+
+def sweep(path, n, masses, f_low, f_high, table=None):
     data = np.fromfile(path).reshape(3, n)
     started, spent = time.perf_counter(), time.process_time()
     t = data[0]
@@ -30,7 +36,7 @@ def sweep(path, n, masses, f_low, f_high):
     f = np.arange(N // 2 + 1) * RATE_HZ / N
     weight = np.zeros(len(f))
     band = (f >= f_low) & (f <= f_high)
-    weight[band] = 1 / noise(f[band])
+    weight[band] = 1 / (noise if table is None else table_noise(table))(f[band])
     matches = []
     for mass in masses:
         k = mass * MSUN_S
@@ -116,7 +122,7 @@ def hdf5_tables(path, modes):
 for line in sys.stdin:
     request = json.loads(line)
     if request["do"] == "sweep":
-        answer = sweep(request["path"], request["n"], request["masses"], request["fLowHz"], request["fHighHz"])
+        answer = sweep(request["path"], request["n"], request["masses"], request["fLowHz"], request["fHighHz"], request.get("noise"))
     elif request["do"] == "bank":
         answer = bank(request["path"], request["lengths"], request["mass"], request["factors"], request["fLowHz"], request["fHighHz"])
     elif request["do"] == "parse":

@@ -14,6 +14,7 @@ export interface Report {
   readonly rows: readonly Row[];
   readonly skipped: readonly string[];
   readonly errorBar: string;
+  readonly growth: string;
   readonly machine: string;
   readonly date: string;
 }
@@ -23,7 +24,7 @@ const ratio = (a: number, b: number): string => `${(a / b).toFixed(1)} ×`;
 const tableRow = ({ what, ours, theirs, target, note }: Row): string =>
   `| ${what} | ${theirs.cpuSeconds.toFixed(2)} | ${ours.cpuSeconds.toFixed(2)} | ${ratio(theirs.cpuSeconds, ours.cpuSeconds)} | ${ratio(theirs.seconds, ours.seconds)} | ${target} | ${note} |`;
 
-export function writeReport({ rows, skipped, errorBar, machine, date }: Report): void {
+export function writeReport({ rows, skipped, errorBar, growth, machine, date }: Report): void {
   const text = `# Speed
 
 Written by \`npm run bench\` on ${date}. ${machine}.
@@ -35,7 +36,7 @@ engine: by processor time of the whole process, and by the clock, which other pr
 | --- | --- | --- | --- | --- | --- | --- |
 ${rows.map(tableRow).join('\n')}
 
-${[errorBar, ...skipped].join('\n\n')}
+${[errorBar, ...skipped, growth].join('\n\n')}
 
 Both sides start from samples in memory and hold nothing prepared. The script is \`tests/bench/reference.py\`: one cubic spline a waveform, then for
 every mass a resampling at 4096 Hz, two transforms, a weighted product and an inverse transform. The engine transforms each waveform once and
