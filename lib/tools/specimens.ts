@@ -1,10 +1,10 @@
-import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
 import { peakTime, withResolutionError } from '@/lib/engine/synthesis/effects';
 import { fieldHatOf } from '@/lib/engine/electromagnetic/em-units';
 import { curvatureOf, mirroredField } from '@/lib/engine/synthesis/electromagnetic-twin';
 import { formatModesText, modeColumns, watermark } from '@/lib/engine/synthesis/modes-text';
 import { synthesise, type SynthesisRequest } from '@/lib/engine/synthesis/synthesise';
-import { binaryFacts, digits, modesFile, positive, sheet, waveform, withoutStart, type SpecimenFile } from './specimen-parts';
+import { binaryFacts, designCurveFile, digits, modesFile, positive, sheet, waveform, withoutStart, type SpecimenFile } from './specimen-parts';
+import { horizonOfSixty, oppositeSpins, recoilOfTwoToOne, sourceFrame, startUpRadiation, typedByHand, weakSpins } from './specimens-of-misreadings';
 import { nearlyCircular } from './specimens-of-orbits';
 import { spinBlindSearch } from './specimens-of-banks';
 import { allSides, longSignal } from './specimens-of-sights';
@@ -18,20 +18,6 @@ import { remnantByBalance, unconvergedPhase } from './specimens-of-runs';
 export interface Specimen {
   readonly folder: string;
   readonly files: () => readonly SpecimenFile[];
-}
-
-function designCurveFile(path: string, points: number): SpecimenFile {
-  const curve = builtInCurve('G2');
-  if (!curve) throw new Error('the design curve G2 is not built in');
-  const rows = Array.from({ length: points }, (_, i) => {
-    const f =
-      i === points - 1 ? curve.fHighHz : Number((curve.fLowHz * (curve.fHighHz / curve.fLowHz) ** (i / (points - 1))).toPrecision(9));
-    return `${f} ${Math.sqrt(curve.psd(f)).toPrecision(digits)}`;
-  });
-  return {
-    path,
-    text: [`# second-generation design (G2), ${points} points`, '# f (Hz)  ASD (Hz^-1/2), one-sided', ...rows, ''].join('\n'),
-  };
 }
 
 const nonSpinning: SynthesisRequest = { massRatio: 1, chi1z: 0, chi2z: 0, mOmega0: 0.012, stepM: 0.5, modes: ['22'] };
@@ -335,4 +321,11 @@ export const specimens: readonly Specimen[] = [
   { folder: 'electromagnetic-twin', files: electromagneticTwin },
   { folder: 'shaken-disc', files: shakenDisc },
   { folder: 'spin-blind-search', files: spinBlindSearch },
+  { folder: 'weak-spins', files: weakSpins },
+  { folder: 'source-frame', files: sourceFrame },
+  { folder: 'recoil-of-two-to-one', files: recoilOfTwoToOne },
+  { folder: 'horizon-of-sixty', files: horizonOfSixty },
+  { folder: 'typed-by-hand', files: typedByHand },
+  { folder: 'start-up-radiation', files: startUpRadiation },
+  { folder: 'opposite-spins', files: oppositeSpins },
 ];
