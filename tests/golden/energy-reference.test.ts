@@ -39,7 +39,7 @@ describe.runIf(isThere)(
       }
     });
 
-    it('find the same energy in the simulation by differences and by splines, within U', () => {
+    it('G9: find the same energy in the simulation by differences and by splines, within U', () => {
       const [point] = measureEnergyOf(waveformOf('simulation')).points;
       expect(point!.routes.B).toAgreeWith(point!.routes.A!, { absolute: point!.expandedUncertainty! });
       expect(point!.value).toAgreeWith(0.038114, 5e-7);
