@@ -2,7 +2,6 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import type { Candidate } from '@/lib/explain/candidate';
 import { decoyMisfits, decoysOf } from '@/lib/explain/search/chance';
 import { judge } from '@/lib/explain/search/judge';
-import type { JudgedClaim } from '@/lib/explain/search/node';
 import { scaledClaim } from '@/lib/explain/search/scaled-claim';
 import { plantedClaim, unexplainedClaim, unexplainedPair, type MadeSheet } from '@/tests/support/explain-claims';
 import { claimOf } from '@/tests/support/explain-flips';
