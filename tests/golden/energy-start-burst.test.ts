@@ -32,12 +32,12 @@ describe('start-up radiation (required: independent derivation; the same signal 
     expect(measureEnergyOf(wave).findings.map(({ code }) => code)).not.toContain('engine/startup-burst');
   });
 
-  it('adds 1.3 % to the energy: 0.0404 instead of 0.0399', () => {
+  it('D5: adds 1.3 % to the energy: 0.0404 instead of 0.0399', () => {
     expect(valueOf(wave)).toAgreeWith(0.03991, 5e-6);
     expect(valueOf(bursting)).toAgreeWith(0.0404, 5e-5);
   });
 
-  it('leaves 0.0399 when the first 150 M are replaced by the post-Newtonian flux of 1.2e-4', () => {
+  it('D5: leaves 0.0399 when the first 150 M are replaced by the post-Newtonian flux of 1.2e-4', () => {
     const [point] = measureEnergyOf(bursting, { startM: 150, includeEnergyBeforeStart: 'removed' }).points;
     expect(point!.value).toAgreeWith(0.0399, 1e-5);
     expect(point!.components!.before).toAgreeWith(1.2e-4, 1e-6);

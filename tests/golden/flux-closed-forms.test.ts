@@ -78,6 +78,17 @@ describe.each(routes)('fluxes against closed forms, route %s', (route) => {
 });
 
 describe('what is radiated', () => {
+  it.each(routes)('D6: comes from ψ₄ of a tapered tone with the amplitude 0.1 of its strain, where the floor is half its frequency, route %s (required: from memory; Reisswig & Pollney 2011, arXiv:1006.1632)', (route) => {
+    const axis = evenTimes(0, 400, 0.5);
+    const ramp = (t: number): number => Math.sin((Math.PI / 2) * Math.min(1, t / 60, (400 - t) / 60)) ** 2;
+    const tone = modeFrom(axis, 2, 2, (t) => [-0.009 * ramp(t) * Math.cos(0.3 * t), 0.009 * ramp(t) * Math.sin(0.3 * t)]);
+    const psi4 = { ...modeSet(axis, [tone], 'psi4'), negativeM: 'given' as const };
+    const from = (startM: number): number => numberBy(radiatedAngularMomentum, route, psi4, { startM, integrationFloor: 0.15 });
+    // J̇ = mωA²/16π of a tone, here over 120 < t < 280.
+    const amplitude = Math.sqrt(((from(120) - from(280)) * 16 * Math.PI) / (2 * 0.3 * 160));
+    expect(amplitude).toAgreeWith(0.1, { relative: 5e-3 });
+  });
+
   goldenChecks([{ id: 'F4', what: 'c⁵/G in erg/s', required: 'from memory', source: 'CODATA 2018', value: 3.62825e59, relative: 1e-5, compute: () => LUMINOSITY_ERG_PER_S }]);
 
   it.each(routes)('takes m/ω of angular momentum for each unit of energy from a mode of one frequency, route %s', (route) => {
@@ -107,7 +118,7 @@ describe('the demonstration signals (required: independent derivation; a separat
     expect(numberBy(peakLuminosity, 'A', equal)).toAgreeWith(1.12e-3, 5e-6);
   });
 
-  it('leave a remnant of 2:1 with 140.4 km/s towards 133°, and one of equal masses at rest', () => {
+  it('D7: leave a remnant of 2:1 with 140.4 km/s towards 133°, and one of equal masses at rest', () => {
     const [point] = measureOf(recoil, twoToOne).points;
     expect(point!.value).toAgreeWith(140.4, { relative: 2e-2 });
     expect(point!.components!.directionDeg).toAgreeWith(133, 3);
@@ -115,7 +126,7 @@ describe('the demonstration signals (required: independent derivation; a separat
     expect(numberBy(recoil, 'B', equal)).toAgreeWith(0, 1e-9);
   });
 
-  it('lose most of it in the plane without odd ℓ’s mirror sign: 51.4 km/s towards 71°', () => {
+  it('D7: lose most of it in the plane without odd ℓ’s mirror sign: 51.4 km/s towards 71°', () => {
     const { content } = twoToOne;
     if (content.kind !== 'modes') throw new Error('modes');
     const wrong = content.modes.map((mode) => (mode.m < 0 && mode.l % 2 === 1 ? { ...mode, re: mode.re.map((x) => -x), im: mode.im.map((x) => -x) } : mode));

@@ -10,7 +10,7 @@ import { binary, measured, valueOf } from '../support/detector-claims';
  * points. Required: independent derivation — a separate numpy evaluation of the same closed forms; agreement as asked for there: match 1e-3, loudness 0.3 %.
  * Scenarios that are specimens stand in specimen-numbers.test.ts.
  */
-const wave = (name: string, chi: number, mOmega0 = 0.012): Waveform => ({ ...binary(name, { chi1z: chi, chi2z: chi, mOmega0, modes: ['22'] }), binary: { massRatio: 1, chi1z: chi, chi2z: chi } });
+const wave = (name: string, chi: number, mOmega0 = 0.012, stepM = 0.5): Waveform => ({ ...binary(name, { chi1z: chi, chi2z: chi, mOmega0, stepM, modes: ['22'] }), binary: { massRatio: 1, chi1z: chi, chi2z: chi } });
 const [a, b] = [wave('A', 0), wave('B', 0.2)];
 const design = builtInCurve('G2')!;
 
@@ -23,7 +23,10 @@ function attached(density: (f: number) => number): NoiseCurve {
 const MASSES = [60, 100, 200] as const;
 const LOUD = 3e-3;
 
-describe('matches of spins 0 and 0.2', () => {
+/** Twenty thousand samples each: longer than most tests on a busy machine. */
+const patient = { timeout: 240_000 };
+
+describe('matches of spins 0 and 0.2', patient, () => {
   it('D1: from 30 Hz are the three that were claimed: 0.9753, 0.9959 and 0.9932', () => {
     const { points } = measured({ quantity: 'match', a, b, settings: { fLowHz: 30 }, over: { setting: 'totalMassMsun', values: MASSES } });
     [0.9753, 0.9959, 0.9932].forEach((value, i) => expect(points[i]!.value).toAgreeWith(value, 1e-3));
@@ -35,7 +38,7 @@ describe('matches of spins 0 and 0.2', () => {
   });
 });
 
-describe('loudness of non-spinning mergers', () => {
+describe('loudness of non-spinning mergers', patient, () => {
   const base = { fLowHz: 20, totalMassMsun: 60 } as const;
   it('D4: is 41.30 where the 60 solar masses are those of the source, at z = 0.1972', () => {
     expect(valueOf({ quantity: 'snr', a, settings: { ...base, distanceMpc: 1000, massFrame: 'source', redshift: 0.1972 } })).toAgreeWith(41.3, { relative: LOUD });
@@ -51,13 +54,13 @@ describe('loudness of non-spinning mergers', () => {
   });
 });
 
-describe('a long signal', () => {
+describe('a long signal', patient, () => {
   it('D14: joined at 100 Hz is 42.7 with the restricted amplitude and 41.1 with its first correction; the long waveform itself is 40.54', () => {
     const short = wave('N', 0, 0.02);
     const settings = { totalMassMsun: 20, distanceMpc: 400, fLowHz: 20 } as const;
     const hybrid = (amplitudeOrder: number): number => valueOf({ quantity: 'hybrid-snr', a: short, settings: { ...settings, joinHz: 100, amplitudeOrder } });
     expect(hybrid(0)).toAgreeWith(42.7, { relative: LOUD });
     expect(hybrid(1)).toAgreeWith(41.1, { relative: LOUD });
-    expect(valueOf({ quantity: 'snr', a: wave('L', 0, 0.0055), settings })).toAgreeWith(40.54, { relative: LOUD });
+    expect(valueOf({ quantity: 'snr', a: wave('L', 0, 0.0057, 1), settings })).toAgreeWith(40.54, { relative: LOUD });
   });
 });
