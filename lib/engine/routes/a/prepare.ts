@@ -26,6 +26,7 @@ export const SETTLED = 3e-9;
 /** That falls at best by two to the order less one with every halving: bins that are far off need not be looked at halving by halving. */
 const MOST_HALVINGS = 3;
 
+/** Where the band, the curve, the spectra and what lives of them overlap, on bins of dfHz. */
 export function rangeFor(
   spectra: readonly Spectrum[],
   sides: readonly Pick<Side, 'secondsPerUnit'>[],
