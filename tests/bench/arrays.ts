@@ -10,7 +10,7 @@ import { quickest, timed, type Spent } from './stopwatch';
 
 const modes = 4;
 const rows = 500_000;
-const rounds = 5;
+const rounds = 15;
 const declared: readonly Column[] = [{ name: 't', role: { kind: 'axis' } }, { name: 're', role: { kind: 're', mode: null } }, { name: 'im', role: { kind: 'im', mode: null } }];
 
 interface Written {

@@ -5,9 +5,8 @@ import { synthesise } from '@/lib/engine/synthesis/synthesise';
 import { MSUN_PER_MPC, MSUN_S } from '@/lib/engine/units/constants';
 import { band } from './sweep';
 
-/** A signal of 100 M☉ against 200 templates at 50 masses each: ratios 1 to 4, spins −0.8 to 0.8. */
+/** A signal of 100 M☉ against templates at 50 masses each: ratios 1 to 4, spins −0.8 to 0.8, ten spins a ratio. */
 export const signalMassMsun = 100;
-const ratios = Array.from({ length: 20 }, (_, i) => 1 + (3 * i) / 19);
 const spins = Array.from({ length: 10 }, (_, i) => -0.8 + (1.6 * i) / 9);
 /** Fifty factors in steps of 2 %. */
 export const massRange: readonly [number, number] = [1 / 1.02 ** 24.5, 1.02 ** 24.5];
@@ -38,9 +37,11 @@ export interface Bank {
   readonly templates: readonly Waveform[];
 }
 
-export const makeBank = (): Bank => ({
+const ratiosOf = (n: number): number[] => Array.from({ length: n }, (_, i) => 1 + (3 * i) / Math.max(1, n - 1));
+
+export const makeBank = (templates = 200): Bank => ({
   signal: waveformOf('signal', 1.6, 0.37),
-  templates: ratios.flatMap((q) => spins.map((spin) => waveformOf(`q ${q}, spin ${spin}`, q, spin))),
+  templates: ratiosOf(templates / spins.length).flatMap((q) => spins.map((spin) => waveformOf(`q ${q}, spin ${spin}`, q, spin))),
 });
 
 /** Tapered as the house tapers; the script is given the same samples, tapered already. */
