@@ -13,6 +13,9 @@ export interface Walk {
   readonly toImaginary: number;
 }
 
+/** Rows up to this length are taken many at a time. */
+const SHORT_ROW = 64;
+
 export class Scatter {
   private readonly shape: readonly number[];
   private readonly strides: readonly number[];
@@ -41,6 +44,13 @@ export class Scatter {
     const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
     let from = 0;
     while (from < count) {
+      const rows = numbers ? this.wholeRows(count - from) : 0;
+      if (numbers && rows > 0) {
+        this.copyRows(numbers, from, rows);
+        from += rows * this.shape[this.last]!;
+        this.advanceRows(rows);
+        continue;
+      }
       const run = this.run(count - from);
       if (numbers) this.copyDoubles(numbers, from, run);
       else this.copy(view, from, run);
@@ -95,6 +105,39 @@ export class Scatter {
         out[to + imaginary] = numbers[at + second]!;
       }
     }
+  }
+
+  /** Rows of the last dimension that can be taken at once, from where the walk stands. */
+  private wholeRows(most: number): number {
+    const { last } = this;
+    if (last < 1 || this.index[last] !== 0 || this.shape[last]! > SHORT_ROW) return 0;
+    return Math.min(Math.floor(most / this.shape[last]!), this.shape[last - 1]! - this.index[last - 1]!);
+  }
+
+  /** Short rows are many: one column at a time over a stretch of them, so that each is written in order. */
+  private copyRows(numbers: Float64Array, from: number, rows: number): void {
+    const { size, firstAt, secondAt } = this.type;
+    const [step, columns] = [size >> 3, this.shape[this.last]!];
+    const first = (from * size + firstAt) >> 3;
+    const begin = this.at;
+    for (let column = 0; column < columns; column++) {
+      const to = begin + column * this.stride;
+      this.copyColumn(numbers, first + column * step, columns * step, to, rows);
+      if (secondAt !== null) this.copyColumn(numbers, first + column * step + ((secondAt - firstAt) >> 3), columns * step, to + this.walk.toImaginary, rows);
+    }
+  }
+
+  private copyColumn(numbers: Float64Array, first: number, step: number, begin: number, rows: number): void {
+    const { out } = this;
+    const stride = this.strides[this.last - 1]!;
+    for (let row = 0, at = first, to = begin; row < rows; row++, at += step, to += stride) out[to] = numbers[at]!;
+  }
+
+  private advanceRows(rows: number): void {
+    const { last } = this;
+    this.index[last - 1]! += rows - 1;
+    this.at += (rows - 1) * this.strides[last - 1]!;
+    this.advance(this.shape[last]!);
   }
 
   private advance(run: number): void {

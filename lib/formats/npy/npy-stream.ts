@@ -24,7 +24,7 @@ async function begin(where: string, source: AsyncIterable<Uint8Array>): Promise<
   for (;;) {
     const next = await chunks.next();
     if (next.done) return err([{ code: 'formats/npy-header', where, saw: `a file that ends after ${bytes.length} bytes, inside its header`, expected: 'a whole .npy file', hint: 'Send the file again; it was cut short.' }]);
-    bytes = join(bytes, next.value);
+    bytes = bytes.length === 0 ? next.value : join(bytes, next.value);
     const header = parseHeader(bytes);
     if (header === null) continue;
     if ('dataAt' in header) return ok({ header, rest: bytes.subarray(header.dataAt), chunks });
@@ -75,7 +75,7 @@ async function collectNumbers(where: string, header: NpyHeader, reading: Reading
   return err([{ code: 'formats/npy-length', where, saw: `${bytes} bytes of numbers`, expected: `${expected}, as the header says`, hint: bytes < expected ? 'Send the file again; it was cut short.' : 'Save the array again.' }]);
 }
 
-/** Whole elements on an eight-byte boundary, whatever the pieces in which they come. */
+/** Whole elements on an eight-byte boundary, whatever the pieces in which they come; pieces that stand on one are not copied. */
 class Stage {
   private readonly bytes: Uint8Array;
   private held = 0;
@@ -88,7 +88,12 @@ class Stage {
   }
 
   push(chunk: Uint8Array): void {
-    for (let from = 0; from < chunk.length; ) {
+    let from = 0;
+    if (this.held === 0 && chunk.byteOffset % 8 === 0) {
+      from = chunk.length - (chunk.length % this.size);
+      if (from > 0) this.take(chunk.subarray(0, from));
+    }
+    while (from < chunk.length) {
       const part = chunk.subarray(from, from + this.bytes.length - this.held);
       this.bytes.set(part, this.held);
       this.held += part.length;
