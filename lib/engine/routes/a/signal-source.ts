@@ -15,7 +15,7 @@ const FINER = 16;
 const MOST_FINE = 1 << 20;
 const TAPS = 8;
 /** Nodes −3 … 4: one over the product of their distances. */
-const scales = Float64Array.from({ length: TAPS }, (_, j) => {
+const scales: readonly number[] = Array.from({ length: TAPS }, (_, j) => {
   let product = 1;
   for (let i = 0; i < TAPS; i++) if (i !== j) product *= j - i;
   return 1 / product;
@@ -39,35 +39,33 @@ function fineOf({ values, dt }: ResponseSeries): Fine {
   return { spacing: 1 / (size * dt), re, im };
 }
 
-const weights = new Float64Array(TAPS);
-const below = new Float64Array(TAPS + 1);
-/** Lagrange weights of nodes −3 … 4 at x in [0, 1). */
-function weigh(x: number): void {
-  below[0] = 1;
-  for (let j = 0; j < TAPS; j++) below[j + 1] = below[j]! * (x - j + 3);
-  let above = 1;
-  for (let j = TAPS - 1; j >= 0; j--) {
-    weights[j] = scales[j]! * below[j]! * above;
-    above *= x - j + 3;
-  }
-}
-
+/** Lagrange's polynomial through eight bins from `from` on, at x from the fourth of them, written out: every bin of every mass asks for it. */
 function readFine({ spacing, re, im }: Fine, dF: number, first: number, count: number): Float64Array {
   const out = new Float64Array(2 * count);
   const ratio = dF / spacing;
   const last = re.length - TAPS;
+  const [s0, s1, s2, s3, s4, s5, s6, s7] = scales as unknown as readonly [number, number, number, number, number, number, number, number];
   for (let k = 0; k < count; k++) {
     const place = (first + k) * ratio;
     const from = Math.max(0, Math.min(last, Math.floor(place) - 3));
-    weigh(place - from - 3);
-    let x = 0;
-    let y = 0;
-    for (let j = 0; j < TAPS; j++) {
-      x += weights[j]! * re[from + j]!;
-      y += weights[j]! * im[from + j]!;
-    }
-    out[2 * k] = x;
-    out[2 * k + 1] = y;
+    const d = place - from - 3;
+    const [a, b, c, e, f, g, h] = [d + 3, d + 2, d + 1, d - 1, d - 2, d - 3, d - 4];
+    const ab = a * b;
+    const cd = c * d;
+    const ef = e * f;
+    const gh = g * h;
+    const low = ab * cd;
+    const high = ef * gh;
+    const w0 = s0 * b * cd * high;
+    const w1 = s1 * a * cd * high;
+    const w2 = s2 * ab * d * high;
+    const w3 = s3 * ab * c * high;
+    const w4 = s4 * low * f * gh;
+    const w5 = s5 * low * e * gh;
+    const w6 = s6 * low * ef * h;
+    const w7 = s7 * low * ef * g;
+    out[2 * k] = w0 * re[from]! + w1 * re[from + 1]! + w2 * re[from + 2]! + w3 * re[from + 3]! + w4 * re[from + 4]! + w5 * re[from + 5]! + w6 * re[from + 6]! + w7 * re[from + 7]!;
+    out[2 * k + 1] = w0 * im[from]! + w1 * im[from + 1]! + w2 * im[from + 2]! + w3 * im[from + 3]! + w4 * im[from + 4]! + w5 * im[from + 5]! + w6 * im[from + 6]! + w7 * im[from + 7]!;
   }
   return out;
 }
