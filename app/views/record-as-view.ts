@@ -45,7 +45,7 @@ const decisionOf = ({ document, decision }: PublishedRecord): DecisionView => ({
 const historyOf = (record: PublishedRecord, lodged: LodgedView | null): RecordView['history'] => [
   ...(lodged?.revisions ?? []).toReversed().map((revision) => ({ on: formatDay(revision.lodgedAt), text: `Lodged, revision ${revision.number}` })),
   { on: formatDay(record.document.enteredAt), text: `Entered by ${record.document.decision.by}` },
-  ...(record.standing === 'entered' ? [] : [{ on: formatDay(record.standingSince), text: record.standingReason || record.standing }]),
+  ...(record.standing === 'entered' && record.standingReason === '' ? [] : [{ on: formatDay(record.standingSince), text: record.standingReason || record.standing }]),
 ];
 
 /** A published record. `lodged` adds the statement, the names in the sheet and the curves; the numbers are the signed ones. */

@@ -75,6 +75,8 @@ export const SUBMISSION_ACTIONS = {
   'review.enter': { editor: ['deciding'] },
   'review.hold': { editor: ['lodged', 'triage', 'in-review', 'deciding', 'back-with-author'] },
   'review.resume': { editor: ['on-hold'] },
+  /** After a change of the engine. */
+  'record.recheck': { administrator: ['entered', 'under-recheck'] },
   'record.strike': { editor: ['entered', 'superseded', 'under-recheck', 'lapsed'] },
 
   /** Moves of the machine. */

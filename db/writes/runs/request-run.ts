@@ -12,7 +12,7 @@ export interface RunRequest {
   readonly inputsDigest: string;
 }
 
-type MayRun = SubmissionGrant<'submission.check'> | SubmissionGrant<'submission.lodge'> | SubmissionGrant<'submission.vary'>;
+type MayRun = SubmissionGrant<'submission.check'> | SubmissionGrant<'submission.lodge'> | SubmissionGrant<'submission.vary'> | SubmissionGrant<'record.recheck'>;
 
 /** A run and its place to tell progress. An official run that exists already for this revision and engine is found, not doubled. */
 export async function requestRun(tx: Transaction, grant: MayRun, request: RunRequest): Promise<string> {

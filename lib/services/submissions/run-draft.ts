@@ -9,7 +9,7 @@ import type { SubmissionGrant } from '@/lib/policy/grant';
 import { inputsDigest } from '@/lib/services/runs/inputs-digest';
 import { asDraftSheet } from './draft-sheet';
 
-type MayRun = SubmissionGrant<'submission.check'> | SubmissionGrant<'submission.lodge'>;
+type MayRun = SubmissionGrant<'submission.check'> | SubmissionGrant<'submission.lodge'> | SubmissionGrant<'record.recheck'>;
 
 /** Asks for a run of the revision as it stands now: its sheet and file hashes are written into the run. */
 export async function runRevision(tx: Transaction, grant: MayRun, row: RevisionRow, kind: Exclude<RunKind, 'variation'>): Promise<string> {

@@ -5,5 +5,7 @@ import type { DemoActors } from './open-accounts';
 export interface Course {
   readonly title: string;
   readonly stands: string;
+  /** False: begun when the site is open, and measured by its worker; nobody shall wait for it. */
+  readonly beforeOpening: boolean;
   readonly run: (room: DemoRoom, people: DemoActors) => Promise<void>;
 }

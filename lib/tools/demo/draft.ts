@@ -22,6 +22,7 @@ const CLAIMED = ['1.04', '1.04'];
 export const draft: Course = {
   title: TITLE,
   stands: 'a draft',
+  beforeOpening: true,
   async run(room, { marrable }) {
     const id = await loadSpecimen(marrable, 'spin-visible', sheetText(), (name) => name !== 'noise.txt');
     await nameCoAuthor(marrable, id, DEMO_PEOPLE.quennell.email);

@@ -3,12 +3,15 @@ import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { SignedInActor } from '@/lib/policy/actor';
 import { answerFinding } from '@/lib/services/submissions/answer-finding';
-import { addCoAuthor } from '@/lib/services/submissions/change-people';
+import { addCoAuthor, confirmAuthorship } from '@/lib/services/submissions/change-people';
 import { checkDraft } from '@/lib/services/submissions/check-draft';
 import { getDraft } from '@/lib/services/submissions/get-draft';
 import { createFromFolder } from '@/lib/services/submissions/load-sheet';
 import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
+import { reviseSubmission } from '@/lib/services/submissions/revise-submission';
+import { updateDraft } from '@/lib/services/submissions/update-draft';
 import { must, type DemoRoom } from './demo-room';
+import { DEMO_PEOPLE, type DemoPerson } from './people';
 
 const SPECIMENS = path.join(path.dirname(fileURLToPath(import.meta.url)), '..', '..', '..', 'content', 'specimens');
 
@@ -27,6 +30,29 @@ export async function loadSpecimen(author: SignedInActor, folder: string, sheet 
 }
 
 export const nameCoAuthor = async (author: SignedInActor, id: string, email: string): Promise<void> => void must(await addCoAuthor(author, id, { email }));
+
+/** A draft of two people who both stand by it. */
+export async function loadTogether(author: SignedInActor, partner: SignedInActor, folder: string): Promise<string> {
+  const id = await loadSpecimen(author, folder);
+  const email = Object.values<DemoPerson>(DEMO_PEOPLE).find(({ name }) => name === partner.name)?.email ?? '';
+  await nameCoAuthor(author, id, email);
+  must(await confirmAuthorship(partner, id));
+  return id;
+}
+
+/** The next revision: another statement, other claims, or a setting of theirs. */
+export async function restate(author: SignedInActor, id: string, change: { readonly statement: string; readonly claims: (before: readonly DraftClaim[]) => readonly DraftClaim[] }): Promise<void> {
+  must(await reviseSubmission(author, id));
+  const { revision } = must(await getDraft(author, id));
+  const claims = change.claims(revision.sheet.claims as readonly DraftClaim[]);
+  must(await updateDraft(author, id, { version: revision.version, statement: change.statement, sheet: { claims: claims as never } }));
+}
+
+export interface DraftClaim {
+  readonly id: string;
+  readonly settings?: Readonly<Record<string, unknown>>;
+  readonly [field: string]: unknown;
+}
 
 export async function checkWell(room: DemoRoom, author: SignedInActor, id: string): Promise<void> {
   await room.compute(must(await checkDraft(author, id)).runId);

@@ -6,6 +6,7 @@ import { beginReview, reply, report, startThread } from './reviewing';
 export const loudness: Course = {
   title: 'Loudness of non-spinning mergers at 1 Gpc',
   stands: 'deciding',
+  beforeOpening: true,
   async run(room, { ondaro, vasterling, tansley, amsel }) {
     const id = await loadSpecimen(ondaro, 'loudness');
     await lodge(room, ondaro, id);

@@ -1,6 +1,8 @@
 import { randomInt } from 'node:crypto';
 import { existsSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
+import { database } from '@/db/client';
+import { users } from '@/db/schema/accounts';
 import type { SignedInActor } from '@/lib/policy/actor';
 import { createAccount } from '@/lib/services/accounts/create-account';
 import { DEMO_PEOPLE, type DemoName, type DemoPerson } from './people';
@@ -38,6 +40,18 @@ async function openAccount({ part: _part, ...person }: DemoPerson, password: str
   const { name, role } = person;
   const userId = await createAccount({ ...person, password });
   return { kind: 'member', userId, name, accountRole: role };
+}
+
+/** The same people, once they have accounts. */
+export async function findAccounts(): Promise<DemoActors> {
+  const rows = await database().select({ userId: users.id, email: users.email }).from(users);
+  const idOf = new Map(rows.map(({ email, userId }) => [email, userId]));
+  const actors = Object.entries<DemoPerson>(DEMO_PEOPLE).map(([key, { email, name, role }]) => {
+    const userId = idOf.get(email);
+    if (userId === undefined) throw new Error(`${name} has no account`);
+    return [key, { kind: 'member', userId, name, accountRole: role } satisfies SignedInActor] as const;
+  });
+  return Object.fromEntries(actors) as DemoActors;
 }
 
 /** A seed that begins again keeps the passwords that were printed already. */

@@ -32,6 +32,10 @@ export const DEMO_PEOPLE = {
   ondaro: { part: 'author of the loudness', name: 'M. Ondaro', email: 'm.ondaro@saltern.example', affiliation: 'Saltern Institute of Strong Gravity', role: 'member' },
   brightwater: { part: 'author of the match', name: 'H. Brightwater', email: 'h.brightwater@oxbow.example', affiliation: 'Oxbow Relativity Unit', role: 'member', linkedOrcid: '0000-0000-4210-8159' },
   dovrel: { part: 'author of the energy', name: 'K. Dovrel', email: 'k.dovrel@hollowell.example', affiliation: 'Hollowell Computation Centre', role: 'member' },
+  okonjo: { part: 'second editor', name: 'J. Okonjo-Vale', email: 'j.okonjo-vale@counterfoil.example', affiliation: COUNTERFOIL, role: 'editor' },
+  pellworm: { part: 'author of the twin', name: 'D. Pellworm', email: 'd.pellworm@northquay.example', affiliation: 'North Quay Astrophysics', role: 'member' },
+  lindmere: { part: 'co-author at Saltern', name: 'A. Lindmere', email: 'a.lindmere@saltern.example', affiliation: 'Saltern Institute of Strong Gravity', role: 'member' },
+  hartsease: { part: 'co-author at Oxbow', name: 'F. Hartsease', email: 'f.hartsease@oxbow.example', affiliation: 'Oxbow Relativity Unit', role: 'member' },
 } as const satisfies Readonly<Record<string, DemoPerson>>;
 
 export type DemoName = keyof typeof DEMO_PEOPLE;

@@ -14,6 +14,7 @@ import { beginReview, enterAtLevelOne, reply, report, sendBack, startThread } fr
 export const preciseMatch: Course = {
   title: 'High-precision match of two models',
   stands: 'entered, digits reduced',
+  beforeOpening: true,
   async run(room, people) {
     const { brightwater, amsel } = people;
     const id = await loadSpecimen(brightwater, 'precise-match');

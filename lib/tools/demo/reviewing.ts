@@ -1,6 +1,7 @@
+import type { ResultPoint } from '@/lib/pipeline/result';
 import type { SignedInActor } from '@/lib/policy/actor';
 import type { Recommendation, ReportAnswers } from '@/lib/reviews/report';
-import type { DecisionRemark } from '@/lib/reviews/decision';
+import type { DecisionRemark, Level } from '@/lib/reviews/decision';
 import { decide, type DecisionRequest } from '@/lib/services/decisions/decide';
 import { draftDecision } from '@/lib/services/decisions/draft-decision';
 import { answerInvitation } from '@/lib/services/reviews/answer-invitation';
@@ -9,7 +10,9 @@ import { inviteReferee } from '@/lib/services/reviews/invite-referee';
 import { openThread, type ThreadRequest } from '@/lib/services/reviews/open-thread';
 import { replyToThread } from '@/lib/services/reviews/reply-to-thread';
 import { takeTriage } from '@/lib/services/reviews/take-triage';
-import { must } from './demo-room';
+import { listVariations } from '@/lib/services/variations/list-variations';
+import { requestVariation } from '@/lib/services/variations/request-variation';
+import { must, type DemoRoom } from './demo-room';
 
 /** An editor takes it, asks the referees, and they accept: in review, round 1. */
 export async function beginReview(editor: SignedInActor, id: string, referees: readonly SignedInActor[]): Promise<void> {
@@ -39,7 +42,39 @@ export async function sendBack(editor: SignedInActor, id: string, prose: string)
   must(await decide(editor, id, { kind: 'back-with-author', prose, typed: signingWords }));
 }
 
-export async function enterAtLevelOne(editor: SignedInActor, id: string, remarks: readonly DecisionRemark[], words: Words): Promise<void> {
+export const enterAtLevelOne = (editor: SignedInActor, id: string, remarks: readonly DecisionRemark[], words: Words): Promise<void> => enter(editor, id, 1, remarks, words);
+
+export async function enter(editor: SignedInActor, id: string, level: Level, remarks: readonly DecisionRemark[], words: Words): Promise<void> {
   const { signingWords } = must(await draftDecision(editor, id));
-  must(await decide(editor, id, { kind: 'enter', level: 1, remarks, ...words, typed: signingWords }));
+  must(await decide(editor, id, { kind: 'enter', level, remarks, ...words, typed: signingWords }));
+}
+
+/** A referee reruns one claim with another setting, and asks about it where the number stands. */
+export async function askWithRerun(room: DemoRoom, referee: SignedInActor, id: string, rerun: Rerun): Promise<string> {
+  const { claim, at, settings, note, body } = rerun;
+  const { variationId, runId } = must(await requestVariation(referee, id, { claimId: claim, changes: { settings }, note }));
+  await room.compute(runId);
+  const found = (await pointsOf(referee, id, variationId)).map(spoken).join(', ');
+  return startThread(referee, id, { kind: 'must-change', anchor: { claim, at }, body: `${body} It gives ${found}.`, variationId });
+}
+
+interface Rerun {
+  readonly claim: string;
+  readonly at: Readonly<Record<string, number>> | null;
+  readonly settings: Readonly<Record<string, unknown>>;
+  readonly note: string;
+  readonly body: string;
+}
+
+async function pointsOf(actor: SignedInActor, id: string, variationId: string): Promise<readonly ResultPoint[]> {
+  const { variations } = must(await listVariations(actor, id));
+  const run = variations.find((v) => v.id === variationId)?.run;
+  if (run?.state !== 'measured') throw new Error(`the rerun of ${id} is ${run?.state ?? 'not there'}`);
+  return run.result.claims[0]?.points ?? [];
+}
+
+function spoken({ value, at }: ResultPoint): string {
+  const number = value === null ? 'no number' : String(Number(value.toPrecision(4)));
+  const mass = at['totalMassMsun'];
+  return mass === undefined ? number : `${number} at ${mass} solar masses`;
 }

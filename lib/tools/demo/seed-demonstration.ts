@@ -1,26 +1,26 @@
 import { database } from '@/db/client';
 import { users } from '@/db/schema/accounts';
 import type { Course } from './course';
-import { openDemoRoom, type DemoRoom } from './demo-room';
-import { draft } from './draft';
-import { loudness } from './loudness';
-import { openAccounts, type DemoActors } from './open-accounts';
-import { preciseMatch } from './precise-match';
-import { radiatedEnergy } from './radiated-energy';
-import { spinVisible } from './spin-visible';
+import { EARLY, LATER } from './courses';
+import { openDemoRoom, openWaitingRoom, type DemoRoom } from './demo-room';
+import { recheckRecords } from '../recheck-records';
+import { leaveForLater, takeNext } from './later-courses';
+import { findAccounts, openAccounts, type DemoActors } from './open-accounts';
 
-const COURSES: readonly Course[] = [preciseMatch, spinVisible, radiatedEnergy, loudness, draft];
+type Say = (line: string) => void;
 
 /** Fills an empty database; false when somebody has an account already, and then nothing is touched. */
-export async function seedDemonstration(dataFolder: string, say: (line: string) => void): Promise<boolean> {
+export async function seedDemonstration(dataFolder: string, say: Say, everything = false): Promise<boolean> {
   const room = openDemoRoom();
   try {
     if ((await database().select({ id: users.id }).from(users).limit(1)).length > 0) return false;
     const people = await openAccounts(dataFolder);
     say(`${Object.keys(people).length} invented people have accounts`);
-    await takeAllCourses(room, people, say);
+    await takeAllCourses(everything ? [...LATER].reverse().concat(EARLY) : EARLY, room, people, say);
     await room.sign();
     say('the signer entered what was decided');
+    await recheckRecords(room, people.szenthe, say);
+    if (!everything) leaveForLater(dataFolder);
     return true;
   } finally {
     await room.close();
@@ -28,11 +28,25 @@ export async function seedDemonstration(dataFolder: string, say: (line: string) 
 }
 
 /** Side by side, for the computing threads are two; whatever breaks, no course is left running. */
-async function takeAllCourses(room: DemoRoom, people: DemoActors, say: (line: string) => void): Promise<void> {
-  const taken = COURSES.map(async ({ title, stands, run }) => {
+async function takeAllCourses(courses: readonly Course[], room: DemoRoom, people: DemoActors, say: Say): Promise<void> {
+  const taken = courses.map(async ({ title, stands, run }) => {
     await run(room, people);
     say(`“${title}”: ${stands}`);
   });
   const broken = (await Promise.allSettled(taken)).find((one) => one.status === 'rejected');
   if (broken) throw broken.reason;
+}
+
+/** The rest, one after another beside the open site: one of the worker's threads stays free for visitors. */
+export async function seedTheRest(dataFolder: string, say: Say): Promise<void> {
+  const room = openWaitingRoom();
+  try {
+    const people = await findAccounts();
+    for (let course = takeNext(dataFolder); course; course = takeNext(dataFolder)) {
+      await course.run(room, people);
+      say(`“${course.title}”: ${course.stands}`);
+    }
+  } finally {
+    await room.close();
+  }
 }

@@ -1,6 +1,6 @@
 import { runStep } from './commands.mjs';
 import { ensureBuild } from './build.mjs';
-import { demoAccounts, prepareDatabase, prepareDemo } from './demo.mjs';
+import { demoAccounts, prepareDatabase, prepareDemo, startRestOfSeed } from './demo.mjs';
 import { SetupError, say } from './ground.mjs';
 import { startScript, startSigner, startWeb, startWorker, waitUntilReady } from './parts.mjs';
 
@@ -18,6 +18,7 @@ export async function startDemo(supervisor, { dev }) {
   supervisor.keep(() => startWorker(env));
   supervisor.keep(() => startSigner(env));
   await waitUntilReady(`http://127.0.0.1:${ports.web.port}/readyz`, web);
+  supervisor.once(() => startRestOfSeed(env));
   return demoSummary(env, postgres.port);
 }
 

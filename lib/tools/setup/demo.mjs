@@ -3,6 +3,7 @@ import path from 'node:path';
 import { runStep } from './commands.mjs';
 import { DATA, ROOT, SetupError, say } from './ground.mjs';
 import { holderOf } from './lock.mjs';
+import { startScript } from './parts.mjs';
 import { reservePort } from './ports.mjs';
 import { roleUrl, startPostgres } from './postgres.mjs';
 import { secrets, signingKeyFile } from './secrets.mjs';
@@ -80,6 +81,11 @@ export async function prepareDatabase(env) {
   fs.writeFileSync(SEEDING, '');
   await tsx(SEED, env);
   fs.rmSync(SEEDING);
+}
+
+/** The courses that nobody waits for, begun when the site is open; undefined when there are none left. */
+export function startRestOfSeed(env) {
+  return fs.existsSync(path.join(DATA, 'demo-later.json')) ? startScript('seed', 'lib/tools/seed-later.ts', env) : undefined;
 }
 
 /** Exit code 0 when nobody has an account yet. */

@@ -34,6 +34,14 @@ export class Supervisor {
     return part;
   }
 
+  /** For a piece of work that ends by itself; stopped with the rest when it has not. */
+  once(start) {
+    const part = this.stopping ? undefined : start();
+    if (!part) return;
+    this.#parts.add(part);
+    void part.ended.then(() => this.#parts.delete(part));
+  }
+
   /** For a server that is no child of ours: looks whether it is up, and brings it up again. */
   watch(name, { isUp, bringUp }) {
     setInterval(() => {
