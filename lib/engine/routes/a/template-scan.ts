@@ -55,7 +55,14 @@ function productOf(a: MassSlice, b: PackedSide, buffers: Buffers): CrossSpectrum
   return { first: from, n, plusRe: re, plusIm: im, minusRe: null, minusIm: null, normA: a.norm, normB: normOf(a.weights, b) };
 }
 
-/** One signal's slices at the masses last asked for. */
+/**
+ * One signal's slices, those last asked for kept.
+ * Shape:  a bank made for this signal among others; a slice for any factor.
+ * Units:  as `massSlice`.
+ * Error:  as `massSlice`.
+ * Fails:  never.
+ * Source: ours.
+ */
 export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): (factor: number) => MassSlice {
   const dFOf = (factor: number): number => Number((bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
   const source = signalSource(a, dFOf(1), { response: request.response, store, numerics });
