@@ -117,7 +117,7 @@ function AtOnceLine({ source, changes }: { readonly source: VariationSource; rea
       {known && (
         <div className="rounded border border-hair-2 bg-sheet px-3 py-2">
           <p><strong>At once</strong>, by the factor {formatNumber(known.factor, { significant: 6 })} on the official number; nothing was rerun:</p>
-          <ul>{known.points.slice(0, 6).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.official, null, source.unit).replace(/ ± unknown$/, '')} → {formatWithUncertainty(p.value, p.expandedUncertainty, source.unit)}</li>)}</ul>
+          <ul>{known.points.slice(0, 6).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.official, source.points[i]?.expandedUncertainty ?? null, source.unit)} → {formatWithUncertainty(p.value, p.expandedUncertainty, source.unit)}</li>)}</ul>
         </div>
       )}
     </div>
