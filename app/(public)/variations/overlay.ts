@@ -38,11 +38,14 @@ function overlaid(official: Figure, varied: Figure): Figure {
   return { ...official, x: { ...official.x, values: xs }, series: [...own, ...notClaimed.map((s) => ({ ...moved(s, varied.x.values, xs), label: `${s.label}, varied`, role: 'varied' as const }))] };
 }
 
+/** Curves of two points of a sweep differ by more than what was varied. */
+const atOnePlace = ({ at: a = {} }: Figure, { at: b = {} }: Figure): boolean => Object.keys(a).length === Object.keys(b).length && Object.entries(a).every(([name, value]) => b[name] === value);
+
 /** Figures of the official run with those of the variation laid over, by kind, in their order; what only one has stands alone. */
 export function overlayFigures(official: readonly Figure[], varied: readonly Figure[]): readonly Figure[] {
   const left = [...varied];
   const both = official.map((figure) => {
-    const i = left.findIndex((other) => other.kind === figure.kind && other.x.label === figure.x.label && other.x.unit === figure.x.unit);
+    const i = left.findIndex((other) => other.kind === figure.kind && other.x.label === figure.x.label && other.x.unit === figure.x.unit && atOnePlace(figure, other));
     const [other] = i < 0 ? [] : left.splice(i, 1);
     return other ? overlaid(figure, other) : figure;
   });

@@ -60,6 +60,13 @@ describe('the plots of both', () => {
     expect(both?.series).toHaveLength(1);
   });
 
+  it('are not laid over one another where they are of two points of a sweep', () => {
+    const at = (totalMassMsun: number): Figure => ({ ...figure([0, 1], [1, totalMassMsun]), at: { totalMassMsun } });
+    expect(overlayFigures([at(60)], [figure([0, 1], [1, 3])]).map((f) => f.title)).toEqual(['Weighted integrand', 'Weighted integrand, varied']);
+    expect(overlayFigures([at(60)], [at(100)])).toHaveLength(2);
+    expect(overlayFigures([at(60)], [{ ...at(60), series: figure([0, 1], [2, 3]).series }])).toHaveLength(1);
+  });
+
   it('keep a figure that only one of them has', () => {
     const figures = overlayFigures([figure([0, 1], [1, 2])], [figure([0, 1], [1, 3]), figure([60], [0.9], 'sweep')]);
     expect(figures.map((f) => f.title)).toEqual(['Weighted integrand', 'Weighted integrand, varied']);
