@@ -66,6 +66,32 @@ const sensitivity = z.looseObject({
   because: z.string().optional(),
 });
 
+/** A reading under which the claim would agree; a hint to people, never a verdict. */
+const candidate = z.looseObject({
+  id: z.string(),
+  settings: z.record(z.string(), z.unknown()),
+  values: z.array(nullable),
+  chance: z.number().min(0).max(1),
+  tried: z.int(),
+  standing: z.enum(['candidate', 'coincidence']),
+  odds: z.number(),
+  readings: z.array(z.looseObject({ conventions: z.array(z.string()), clause: z.string(), settings: z.record(z.string(), z.unknown()), evidence: z.enum(['supports', 'contradicts', 'none']), evidenceFrom: z.string().nullable() })).min(1),
+  explains: z.array(z.string()),
+  breaks: z.array(z.string()),
+  changes: z.union([z.literal(1), z.literal(2)]),
+  sentence: z.string(),
+});
+
+const search = z.looseObject({
+  tried: z.int(),
+  failed: z.int(),
+  left: z.int(),
+  decoys: z.int(),
+  stoppedBecause: z.string().nullable(),
+  extraNumber: z.looseObject({ setting: z.string(), at: z.number(), unit: z.string(), predictions: z.array(z.looseObject({ candidate: z.string().nullable(), value: z.number(), expandedUncertainty: nullable })), apart: z.number(), sentence: z.string() }).nullable(),
+  sentence: z.string(),
+});
+
 export const resultClaimSchema = z.looseObject({
   id: z.string(),
   quantity: z.string(),
@@ -82,7 +108,8 @@ export const resultClaimSchema = z.looseObject({
   settings: z.array(z.looseObject({ name: z.string(), value: z.unknown(), standing: z.enum(['declared', 'assumed', 'swept']), unit: z.string().optional() })),
   routeB: z.array(z.int()),
   findings: z.array(finding),
-  candidates: z.array(z.unknown()),
+  candidates: z.array(candidate),
+  search: search.optional(),
 });
 
 export const resultSchema = z.looseObject({

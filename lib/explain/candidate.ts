@@ -65,4 +65,6 @@ export interface SearchOfClaim {
   /** Why the search ended before its end; null where it did not. */
   readonly stoppedBecause: string | null;
   readonly extraNumber: ExtraNumber | null;
+  /** What came of it, in words. */
+  readonly sentence: string;
 }

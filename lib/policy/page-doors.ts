@@ -17,6 +17,7 @@ export const PAGE_DOORS = {
   'page /methods/noise': ['anyone'],
   'page /methods/findings': ['anyone'],
   'page /methods/budget': ['anyone'],
+  'page /methods/candidates': ['anyone'],
   'page /interface': ['anyone'],
   'page /problems/{code}': ['anyone'],
   'page /sign-in': ['anyone'],

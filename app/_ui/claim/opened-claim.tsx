@@ -5,6 +5,7 @@ import { ClaimPlots } from '../charts/claim-plots';
 import { figuresAt, type FigurePlace } from '../charts/figure-place';
 import { Formula } from '../math/formula';
 import { BudgetTable } from './budget-table';
+import { CandidatesPart, wasSearched } from './candidates/candidates-part';
 import { OpenedRow } from './claim-open';
 import { PerfCell } from './claim-table';
 import { ComponentTable, hasComponents } from './component-table';
@@ -81,6 +82,7 @@ export function OpenedClaim({ heading, claim, view, slots, ids }: OpenedClaimPro
             {claim.metricBound && <Part title="Metric bound"><MetricBoundLine bound={claim.metricBound} unit={claim.unit} /></Part>}
             {(claim.sensitivities ?? []).length > 0 && <Part title="Sensitivities"><SensitivityTable claim={claim} /></Part>}
             {hasComponents(claim) && <Part title="Beside the number"><ComponentTable claim={claim} /></Part>}
+            {wasSearched(claim) && <Part title="Would agree if"><CandidatesPart claim={claim} slots={slots} /></Part>}
             <Part title="Two routes"><RouteTable claim={claim} /></Part>
             <Part title="Findings">
               {claim.findings.length === 0 ? <p className="text-ui text-ink-2">The checks found nothing to say about these data.</p> : claim.findings.map((finding, i) => <FindingItem key={`${finding.code}${i}`} finding={finding} answer={view.answerTo(finding)} />)}

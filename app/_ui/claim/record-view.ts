@@ -4,6 +4,7 @@
  * from a server to a client component; what is alive (threads, buttons) comes through the slots.
  */
 import type { Finding } from '@/lib/engine/contract/finding';
+import type { ExtraNumber } from '@/lib/explain/candidate';
 import type { ReactNode } from 'react';
 import type { FiguresByClaim, ResultDocument, VerdictWord } from '@/lib/pipeline/result';
 import type { ProgressStep } from '../primitives/progress';
@@ -142,6 +143,10 @@ export interface RecordSlots {
   readonly action?: (claimId: string) => ReactNode;
   /** Under the verdict of a point: `This number changed: 23.71 → 23.69`. */
   readonly change?: (claimId: string, point: number) => ReactNode;
+  /** Under a candidate: the authors' answer, a try as a variation. */
+  readonly candidate?: (claimId: string, candidate: ResultDocument['claims'][number]['candidates'][number]) => ReactNode;
+  /** Under the number that would tell candidates apart: ask the authors for it. */
+  readonly extraNumber?: (claimId: string, extra: ExtraNumber) => ReactNode;
   /** At the end of an opened claim: its threads. */
   readonly discussion?: (claimId: string) => ReactNode;
   /** Buttons of the page's head: cite, download, lodge, decide. */

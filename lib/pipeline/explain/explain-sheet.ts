@@ -4,6 +4,7 @@ import { Workshop } from '@/lib/engine/contract/workshop';
 import type { Candidate, SearchOfClaim } from '@/lib/explain/candidate';
 import type { SiblingPoint } from '@/lib/explain/flips/flip-context';
 import { judge } from '@/lib/explain/search/judge';
+import { searchSentence } from '@/lib/explain/words/search-sentence';
 import type { Inputs } from '../read-inputs';
 import { PredictionCollector } from './collect-predictions';
 import { EditedInputs } from './edit-inputs';
@@ -55,9 +56,10 @@ export function explainSheet(sheet: ClaimSheet, inputs: Inputs, weighed: readonl
     if (found === undefined) continue;
     how.onProgress(0.9, `${subject.judged.id}: the number that would tell them apart`);
     const extraNumber = how.outOfTime() ? null : extraNumberOf(subject, found.candidates, tried, asking);
+    const reach = { ...found.search, left: left.get(subject.judged.id) ?? 0, stoppedBecause };
     explained.set(subject.judged.id, {
       candidates: found.candidates.map((candidate) => atAllPoints(candidate, subject)),
-      search: { ...found.search, left: left.get(subject.judged.id) ?? 0, stoppedBecause, extraNumber },
+      search: { ...reach, extraNumber, sentence: searchSentence(reach, found.candidates) },
     });
   }
   return explained;

@@ -25,6 +25,7 @@ function printClaim(claim: ResultClaim): string {
     `  Stated uncertainty: ${coverageWords(claim)}`,
     ...(claim.assumed.length > 0 ? [`  Assumed: ${assumedWords(claim)}`] : []),
     ...claim.findings.flatMap(findingLines),
+    ...searchLines(claim),
   ];
   return lines.join('\n');
 }
@@ -73,3 +74,18 @@ function findingLines(finding: Finding): string[] {
 }
 
 const capital = (word: string): string => word.charAt(0).toUpperCase() + word.slice(1);
+
+/** What `--explain` adds: candidates first, then what may be coincidence, then how far the search got. */
+function searchLines({ search, candidates }: ResultClaim): string[] {
+  if (search === undefined) return [];
+  const shown = candidates.filter(({ standing }) => standing === 'candidate');
+  const others = candidates.filter(({ standing }) => standing === 'coincidence');
+  return [
+    ...shown.flatMap(({ readings, sentence }, i) => [`  Would agree if ${readings.map(({ clause }) => clause).join('; or if ')}. (candidate ${i + 1} of ${shown.length})`, `    ${sentence}`]),
+    ...others.map(({ readings, chance }) => `  May be coincidence: ${readings.map(({ clause }) => clause).join('; or ')} (chance ${percent(chance)})`),
+    `  Search: ${search.sentence}`,
+    ...(search.extraNumber === null ? [] : [`  One number more: ${search.extraNumber.sentence}`]),
+  ];
+}
+
+const percent = (share: number): string => (share < 0.001 ? 'under 0.1 %' : `${Number((100 * share).toPrecision(2))} %`);

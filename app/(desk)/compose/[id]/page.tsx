@@ -12,6 +12,7 @@ import { listVariations } from '@/lib/services/variations/list-variations';
 import type { VariationList } from '@/lib/services/variations/variation-view';
 import { catalogueRows } from './catalogue-rows';
 import { checkSummary } from './check-summary';
+import { candidateSlots } from '../../candidates/candidate-slots';
 import { Composer } from './composer';
 
 export const metadata: Metadata = { title: 'Composer' };
@@ -32,7 +33,7 @@ function Reading({ draft, variations, asked }: { readonly draft: DraftView; read
     <section aria-labelledby="reading-h" className="mt-12">
       <h2 id="reading-h" className="mb-1">What the check reads</h2>
       <p className="mb-3 text-ui text-ink-2">{draft.check ? (draft.check.current ? 'Of what is saved now; seen by the authors alone.' : 'Of an earlier save; check again for what is saved now.') : 'Nothing has been computed yet.'}</p>
-      <ClaimTable view={view} slots={{ action }} open={asked ? [asked.claimId] : []} />
+      <ClaimTable view={view} slots={{ action, ...candidateSlots({ submissionId: draft.id, runId: draft.check?.run.id ?? null, answers: draft.candidateAnswers, mayAnswer: draft.may.answerCandidates, mayTakeOver: draft.may.edit, mayAsk: false, varyAt: variations ? `/compose/${draft.id}` : null }) }} open={asked ? [asked.claimId] : []} />
       <ClaimTableLegend />
     </section>
   );

@@ -1,0 +1,56 @@
+import Link from 'next/link';
+import type { Route } from 'next';
+import type { RecordSlots } from '@/app/_ui/claim/record-view';
+import { formatDay } from '@/app/views/dates';
+import type { Candidate } from '@/lib/explain/candidate';
+import { answerToCandidate, type CandidateAnswerView } from '@/lib/services/candidates/candidate-answers';
+import { AnswerCandidate } from './answer-candidate';
+import { AskNumber } from './ask-number';
+import { TakeOver } from './take-over';
+
+const answerWords = { confirmed: 'confirmed', 'not-so': 'not so', 'cannot-tell': 'cannot tell' } as const;
+
+export interface CandidateFacts {
+  readonly submissionId: string;
+  readonly runId: string | null;
+  readonly answers: readonly CandidateAnswerView[];
+  readonly mayAnswer: boolean;
+  /** The revision is being written, so that a confirmed reading can be declared in it. */
+  readonly mayTakeOver: boolean;
+  readonly mayAsk: boolean;
+  /** Where a variation with these settings can be tried; null where none can. */
+  readonly varyAt: string | null;
+}
+
+function Answer({ answer }: { readonly answer: CandidateAnswerView }) {
+  return (
+    <div className="text-ui">
+      <p><b>The authors’ answer, {formatDay(answer.answeredAt)}: {answerWords[answer.answer]}.</b>{answer.answer === 'confirmed' && ` It was so: ${answer.clause}.`}</p>
+      {answer.note !== '' && <p className="max-w-[66ch]">{answer.note}</p>}
+    </div>
+  );
+}
+
+function tryHref(varyAt: string, claimId: string, { settings }: Candidate): Route {
+  return `${varyAt}?vary=${encodeURIComponent(claimId)}&settings=${encodeURIComponent(JSON.stringify(settings))}` as Route;
+}
+
+/** What stands under a candidate and under the number that tells candidates apart, for whoever looks. */
+export function candidateSlots({ submissionId, runId, answers, mayAnswer, mayTakeOver, mayAsk, varyAt }: CandidateFacts): Pick<RecordSlots, 'candidate' | 'extraNumber'> {
+  return {
+    candidate: (claimId, candidate) => {
+      const answer = answerToCandidate(answers, runId, claimId, candidate.id);
+      const declares = Object.keys(candidate.settings).length > 0;
+      return (
+        <>
+          {answer && <Answer answer={answer} />}
+          {!answer && !mayAnswer && <p className="text-ui text-ink-2">The authors have not answered.</p>}
+          {answer?.answer === 'confirmed' && mayTakeOver && runId !== null && <TakeOver submissionId={submissionId} runId={runId} claimId={claimId} candidateId={candidate.id} />}
+          {mayAnswer && runId !== null && <AnswerCandidate key={answer?.answer ?? ''} submissionId={submissionId} runId={runId} claimId={claimId} candidate={candidate} again={answer !== null} />}
+          {varyAt !== null && declares && <p><Link href={tryHref(varyAt, claimId, candidate)} className="inline-flex min-h-8 items-center text-ui">Try it as a variation</Link></p>}
+        </>
+      );
+    },
+    ...(mayAsk ? { extraNumber: (claimId, extra) => <AskNumber submissionId={submissionId} claimId={claimId} extra={extra} /> } : {}),
+  };
+}
