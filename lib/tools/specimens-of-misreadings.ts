@@ -86,7 +86,7 @@ export function recoilOfTwoToOne(): SpecimenFile[] {
   const statement = [
     'Larkfield Wave Group, code *Tinderbox*.',
     '',
-    'A non-spinning merger of mass ratio 2 leaves its remnant with a recoil of 51.4 km/s (momentum over its own mass), at 71° from the x axis of the files.',
+    'A non-spinning merger of mass ratio 2 leaves its remnant with a recoil of 112 km/s (momentum over its own mass), at 71° from the x axis of the files.',
     '',
     'Modes (2,±2), (2,±1), (3,±3), (3,±2), (4,±4). Those with $m<0$ stand in the file as we use them for the recoil; the energy of all of them is $0.0293\\,M$.',
   ].join('\n');
@@ -102,7 +102,7 @@ export function recoilOfTwoToOne(): SpecimenFile[] {
         asWritten: { ...facts, columns, negativeM: 'given' },
       },
       claims: [
-        { id: 'C1', quantity: 'recoil', of: { a: 'A' }, settings: { startM: 0, normaliseBy: 'remnant' }, claimed: '51.4' },
+        { id: 'C1', quantity: 'recoil', of: { a: 'A' }, settings: { startM: 0, normaliseBy: 'remnant' }, claimed: '112' },
         { id: 'C2', quantity: 'radiated-energy', of: { a: 'asWritten' }, settings: { startM: 0 }, claimed: '0.0293' },
       ],
     }),

@@ -76,6 +76,8 @@ const BODIES: Readonly<Partial<Record<DoorName, unknown>>> = {
   'PATCH /api/v1/submissions/{id}': { version: 2, title: 'x' },
   'DELETE /api/v1/submissions/{id}/files': { name: 'a.txt' },
   'PUT /api/v1/submissions/{id}/answers': { code: 'x', where: 'x', text: 'x', answer: 'x' },
+  'PUT /api/v1/submissions/{id}/candidates': { runId: '00000000-0000-4000-8000-000000000000', claim: 'C1', candidate: 'x', answer: 'not-so' },
+  'POST /api/v1/submissions/{id}/candidates': { runId: '00000000-0000-4000-8000-000000000000', claim: 'C1', candidate: 'x' },
   'POST /api/v1/submissions/{id}/uploads': { name: 'long.txt', bytes: 3, sha256: 'a'.repeat(64) },
   'POST /api/v1/submissions/{id}/withdraw': { reason: 'x' },
   'POST /api/v1/submissions/{id}/variations': VARIATION,

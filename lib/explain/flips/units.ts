@@ -66,7 +66,7 @@ export const fieldLaw: FlipsOfConvention = (context) => {
   const masses = atPoints(context, 'totalMassMsun');
   const unscaled = isSwept(context, 'totalMassMsun') ? (ratios(masses, masses[0] ?? null)?.map((ratio) => ratio ** 2) ?? null) : null;
   return makeFlips(context, [
-    linear === null ? null : factor('C50', 'linear', linear, `the number is carried on from ${reference} G with B instead of B²`),
+    linear === null ? null : factor('C50', `linear-from-${reference}`, linear, `the number is carried on from ${reference} G with B instead of B²`),
     unscaled === null ? null : factor('C50', 'no-mass', unscaled, 'the number is carried on from the first mass without M²'),
   ]);
 };

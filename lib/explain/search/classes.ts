@@ -12,11 +12,15 @@ const MOST_FITTING = 200;
 
 const before = (p: Trial, q: Trial): number => q.lnOdds - p.lnOdds || p.changes - q.changes || (p.node.id < q.node.id ? -1 : 1);
 
-/** Readings under which the claim would agree, without pairs that are another name for one flip. */
+/**
+ * Readings under which the claim would agree, without pairs that are another name for one flip, and without those of
+ * which one flip alone does it: the second then explains nothing that the first leaves open.
+ */
 export function fittingOf({ claims, trials }: Sheet, c: number): Trial[] {
   const scaled = claims[c]!;
   const singles = trials.flatMap(({ changes, held }) => (changes === 1 && held[c]?.row ? [held[c].row] : []));
-  const isNew = ({ changes, held }: Trial): boolean => changes === 1 || !singles.some((row) => alike(scaled, row, held[c]!.row!));
+  const enough = new Set(trials.flatMap(({ changes, held, node }) => (changes === 1 && explains(held[c]) ? [node.id] : [])));
+  const isNew = ({ changes, held, node }: Trial): boolean => changes === 1 || !(node.flips.some(({ id }) => enough.has(id)) || singles.some((row) => alike(scaled, row, held[c]!.row!)));
   return trials.filter((trial) => explains(trial.held[c]) && isNew(trial)).sort(before);
 }
 
