@@ -25,8 +25,8 @@ export interface ServiceDesk {
   readonly worker: Database;
   readonly store: TestObjectStore;
   person(name: string, role?: AccountRole): Promise<SignedInActor>;
-  /** Does what the worker would: computes each run that has no result. */
-  runAll(): Promise<number>;
+  /** Does what the worker would: computes each run that has no result, and looks for other readings where that is asked. */
+  runAll(how?: { readonly searching: boolean }): Promise<number>;
   /** As the owner, past every right of a role. */
   sql<T>(text: string, ...values: unknown[]): Promise<T[]>;
   close(): Promise<void>;
@@ -46,7 +46,7 @@ export async function openServiceDesk(): Promise<ServiceDesk> {
     worker,
     store,
     person,
-    runAll: () => runAll(worker, store),
+    runAll: ({ searching } = { searching: false }) => runAll(worker, store, searching),
     sql: async <T>(text: string, ...values: unknown[]) => (await owner.$client.query(text, values)).rows as T[],
     async close() {
       await Promise.all([closeDatabase(), worker.$client.end(), owner.$client.end()]);
@@ -63,10 +63,13 @@ async function person(name: string, role: AccountRole = 'member'): Promise<Signe
 }
 
 /** The pipeline itself, in this thread. */
-export const computeHere: ComputeSheet = async ({ sheet, files, withFigures }, { onProgress, signal }) => {
+export const computeHere: ComputeSheet = (job, watch) => compute({ ...job, explain: false }, watch);
+
+/** With the search for other readings, which takes its time. */
+const compute: ComputeSheet = async ({ sheet, files, withFigures, explain }, { onProgress, signal }) => {
   const pathOf = new Map(files.map((f) => [f.name, f.path]));
   const openFile = (name: string) => createReadStream(pathOf.get(name) ?? '/nowhere') as AsyncIterable<Uint8Array>;
-  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256 });
+  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256, ...(explain && { explain: { outOfTime: () => false } }) });
   return done.ok ? ok(done.value) : done;
 };
 
@@ -75,9 +78,9 @@ const streamingSha256 = () => {
   return { update: (bytes: Uint8Array) => void hash.update(bytes), hex: () => hash.digest('hex') };
 };
 
-async function runAll(worker: Database, store: TestObjectStore): Promise<number> {
+async function runAll(worker: Database, store: TestObjectStore, searching: boolean): Promise<number> {
   const waiting = await worker.$client.query<{ id: string }>('select r.id from runs r left join run_results rr on rr.run_id = r.id where rr.run_id is null order by r.requested_at');
-  const room = { database: worker, store: createS3Store(store.env), mail: { SMTP_URL: 'smtp://127.0.0.1:9', MAIL_FROM: 'x@y.example' }, compute: computeHere, signal: new AbortController().signal };
+  const room = { database: worker, store: createS3Store(store.env), mail: { SMTP_URL: 'smtp://127.0.0.1:9', MAIL_FROM: 'x@y.example' }, compute: searching ? compute : computeHere, signal: new AbortController().signal };
   for (const { id } of waiting.rows) await runSubmission({ runId: id }, room, 1);
   return waiting.rows.length;
 }
