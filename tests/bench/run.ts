@@ -16,8 +16,9 @@ import { benchGrowth, growthText } from './growth';
 import { parseTable, writeTable } from './parse';
 import { openReference, type Reference } from './reference';
 import { writeReport, type Row } from './report';
+import { searchCost } from './search-cost';
 import { quickest, timed, type Spent } from './stopwatch';
-import { fHighHz, fLowHz, makePair } from './sweep';
+import { makePair } from './sweep';
 import { benchSweep } from './sweep-rows';
 
 const rounds = 5;
@@ -63,7 +64,7 @@ try {
   rows.push(await benchParse(reference, folder), ...arrays.rows);
   const commit = execFileSync('git', ['rev-parse', '--short', 'HEAD'], { encoding: 'utf8' }).trim();
   const machine = `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.versions.node}, engine ${ENGINE_VERSION} (${commit}), Python ${versions.python}, numpy ${versions.numpy}, scipy ${versions.scipy}`;
-  writeReport({ rows, skipped: arrays.skipped, errorBar: `${errorBar}\n\n${bank[0]}`, growth: `${growth}\n\n${bank[1]}`, machine, date: new Date().toISOString().slice(0, 10) });
+  writeReport({ rows, skipped: arrays.skipped, errorBar: `${errorBar}\n\n${bank[0]}\n\n${await searchCost()}`, growth: `${growth}\n\n${bank[1]}`, machine, date: new Date().toISOString().slice(0, 10) });
 } finally {
   reference.close();
   rmSync(folder, { recursive: true, force: true });

@@ -43,8 +43,7 @@ function intervalOf(axis: Float64Array, t: number): number {
  * Source: barycentric form (Berrut & Trefethen 2004, from memory), its first kind for order 8.
  */
 export function interpolatePair(pair: SeriesPair, grid: UniformGrid, wantedOrder: number): [Float64Array, Float64Array] {
-  const { axis, first, second } = pair;
-  const points = axis.length;
+  const points = pair.axis.length;
   const order = Math.min(wantedOrder, points);
   const outFirst = new Float64Array(grid.n);
   const outSecond = new Float64Array(grid.n);

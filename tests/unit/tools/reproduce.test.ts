@@ -62,8 +62,15 @@ describe('the reproduce command', () => {
     expect((await run()).err).toContain('expected reproduce PATH [--json] [--explain]');
   });
 
-  it('says plainly that it does not look for causes yet', async () => {
-    expect((await run(specimen, '--explain')).err).toContain('not built yet');
+  it('looks for another reading only when it is asked to, and only of claims that do not agree', async () => {
+    const misread = 'content/specimens/electromagnetic-twin';
+    const searched = JSON.parse((await run(misread, '--json', '--explain')).out) as { claims: { id: string; verdict: string; search?: { sentence: string } }[] };
+    expect(resultSchema.safeParse(searched).error).toBeUndefined();
+    expect(searched.claims.filter(({ search }) => search !== undefined).map(({ id, verdict }) => [id, verdict])).toEqual([['C2', 'differs']]);
+    expect((await run(misread, '--json')).out).not.toContain('"search"');
+    const told = (await run(misread, '--explain')).out;
+    expect(told).toContain('May be coincidence: the number is carried on from 10000 G with B instead of B²');
+    expect(told).toContain('Search: ');
   });
 
   it('gives the same bytes on every run, and they fit the published schema', async () => {

@@ -59,6 +59,7 @@ interface Peak {
 
 let columns: FourColumns = [new Float64Array(0), new Float64Array(0), new Float64Array(0), new Float64Array(0)];
 let columnsOwner: PairSweep | null = null;
+const ownColumns = (owner: typeof columnsOwner): void => void (columnsOwner = owner);
 
 export interface SweptAlignment extends Alignment {
   readonly mismatch: number;
@@ -105,7 +106,7 @@ export class PairSweep {
   }
 
   private compressed(): CompressedBins {
-    columnsOwner = this;
+    ownColumns(this);
     return new CompressedBins(this.columns(), FIRST_BIN, this.last, this.kind.order);
   }
 
@@ -120,7 +121,7 @@ export class PairSweep {
   /** Columns of bins stand in arrays that sweeps share: the one that comes back fills them anew. */
   private own(): void {
     if (columnsOwner !== this) this.bins.bins = this.columns();
-    columnsOwner = this;
+    ownColumns(this);
   }
 
   /** Of the spectra as they are, whatever they stand scaled by. */
