@@ -13,6 +13,8 @@ export interface Inspiral {
   readonly reading: InspiralReading | null;
   /** Chirp mass over M, from the rise of Ω at leading order; null where too little of it is there. */
   readonly chirpMass: number | null;
+  /** ω₂₂ just before the largest sample, rad/M. */
+  readonly peakOmega: number;
 }
 
 /** Orbital frequencies at which it is read, the best first: early enough for leading order. */
@@ -109,7 +111,7 @@ export function readInspiral(record: RadiationRecord): Inspiral | null {
     const [before, after] = i < 0 ? [null, null] : [meanFrom(track, i, -1, NEAR_CYCLES), meanFrom(track, i, 1, NEAR_CYCLES)];
     if (before === null || after === null) continue;
     const reading = { omega: (before.omega + after.omega) / 2, atM: record.axis[i]!, amplitude: amplitudeAt(track, size, i) };
-    return { reading, chirpMass: chirpMassOf(track) };
+    return { reading, chirpMass: chirpMassOf(track), peakOmega: peakFrequency(track) };
   }
-  return { reading: null, chirpMass: chirpMassOf(track) };
+  return { reading: null, chirpMass: chirpMassOf(track), peakOmega: peakFrequency(track) };
 }
