@@ -41,8 +41,8 @@ export function AnswerCandidate({ submissionId, runId, claimId, candidate, again
       <TextareaField label="In your words" hint="Optional." rows={2} maxLength={2000} value={note} onChange={(e) => setNote(e.target.value)} />
       <div className="flex flex-wrap gap-2" aria-describedby={hint}>
         <Button size="low" tone="main" busy={busy ? 'Keeping it' : null} onClick={() => say('confirmed')}>Confirmed</Button>
-        <Button size="low" onClick={() => say('not-so')}>Not so</Button>
-        <Button size="low" onClick={() => say('cannot-tell')}>Cannot tell</Button>
+        <Button size="low" aria-disabled={busy || undefined} onClick={() => say('not-so')}>Not so</Button>
+        <Button size="low" aria-disabled={busy || undefined} onClick={() => say('cannot-tell')}>Cannot tell</Button>
         {again && <Button size="low" tone="quiet" onClick={() => setOpen(false)}>Not now</Button>}
       </div>
       <Trouble trouble={trouble} />

@@ -32,7 +32,7 @@ function Answer({ answer }: { readonly answer: CandidateAnswerView }) {
 }
 
 function tryHref(varyAt: string, claimId: string, { settings }: Candidate): Route {
-  return `${varyAt}?vary=${encodeURIComponent(claimId)}&settings=${encodeURIComponent(JSON.stringify(settings))}` as Route;
+  return `${varyAt}?vary=${encodeURIComponent(claimId)}&settings=${encodeURIComponent(JSON.stringify(settings))}&open=${encodeURIComponent(claimId)}#${encodeURIComponent(claimId)}` as Route;
 }
 
 /** What stands under a candidate and under the number that tells candidates apart, for whoever looks. */

@@ -1,3 +1,4 @@
+import { sayOfCandidate } from './answer-candidate';
 import type { Course } from './course';
 import { loadSpecimen, lodge } from './lodging';
 import { beginReview, reply, report, startThread } from './reviewing';
@@ -11,6 +12,7 @@ export const loudness: Course = {
     const id = await loadSpecimen(ondaro, 'loudness');
     await lodge(room, ondaro, id);
     await beginReview(amsel, id, [vasterling, tansley]);
+    await sayOfCandidate(ondaro, id, { claim: 'C1', convention: 'C02', answer: 'cannot-tell', note: 'A factor √2, certainly. Whether the spectrum or the product carries it I have to look up in the code.' });
     const body = 'Both of your numbers are smaller than the recomputed ones by the same factor, $1/\\sqrt2$. A one-sided curve taken for a two-sided one would do that, and so would a prefactor of 2 where your formula has 4. The numbers alone cannot tell these apart. Which is it?';
     const threadId = await startThread(vasterling, id, { kind: 'must-change', anchor: { claim: 'C1', at: { totalMassMsun: 60 } }, body });
     await reply(ondaro, threadId, 'The prefactor. The formula in the statement is right; our program integrates over positive frequencies alone and multiplies by 2. We shall correct both numbers.');

@@ -1,5 +1,6 @@
 import { closeThread } from '@/lib/services/reviews/close-thread';
 import { sendToReview } from '@/lib/services/reviews/send-to-review';
+import { sayOfCandidate } from './answer-candidate';
 import type { Course } from './course';
 import { must, type DemoRoom } from './demo-room';
 import { loadTogether, lodge, restate } from './lodging';
@@ -16,6 +17,7 @@ export const spinVisible: Course = {
     const id = await loadTogether(marrable, quennell, 'spin-visible');
     await lodge(room, marrable, id);
     const edge = await firstRound(room, id, people);
+    await sayOfCandidate(marrable, id, { claim: 'C1', convention: 'C04', answer: 'confirmed', note: 'The script that made the table reads its edge from a file of settings, and that file says 30 Hz; the text says 20 Hz.' });
     await sendBack(amsel, id, 'None of the three numbers follows from a lower edge of 20 Hz, and all three follow from 30 Hz. Please restate either the edge or the numbers. The same referees will look once more.');
     await restate(marrable, id, { statement: RESTATED, claims: (claims) => claims.map((claim) => ({ ...claim, settings: { ...claim.settings, fLowHz: 30 } })) });
     await reply(marrable, edge, 'The table was made with 30 Hz, and that is the band we mean. Revision 2 says so, in the text and in the sheet; the numbers stay.');

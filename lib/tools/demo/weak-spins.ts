@@ -1,3 +1,4 @@
+import { sayOfCandidate } from './answer-candidate';
 import type { Course } from './course';
 import { loadTogether, lodge } from './lodging';
 import { plainReport } from './plain-report';
@@ -18,6 +19,7 @@ export const weakSpins: Course = {
     const answers = plainReport({ conventions: 'The column is an amplitude density by its heading and by its size. The printed matches are those of a curve that was not squared.' });
     await report(dovrel, id, 'major', answers);
     await report(vasterling, id, 'major', { ...answers, scope: 'The conclusion changes: weak spins are told apart less easily than claimed.' });
+    await sayOfCandidate(brightwater, id, { claim: 'C1', convention: 'C01', answer: 'confirmed', note: 'The column was never squared.' });
     await sendBack(okonjo, id, 'The curve was used without being squared; the authors have found it themselves. Please print the numbers of the curve as it is declared, and say what becomes of the conclusion.');
   },
 };

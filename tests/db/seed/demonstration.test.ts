@@ -124,6 +124,19 @@ describe('the demonstration that an empty database is filled with', () => {
     expect(attached).toHaveLength(2);
   });
 
+  it('the search names what each author meant, and three of them have answered', async () => {
+    const answers = await sql<{ title: string; clause: string; answer: string }>(
+      'select v.title, c.clause, c.answer from candidate_answers c join revisions v on v.id = c.revision_id order by v.title',
+    );
+    expect(answers.map(({ title, answer }) => [title, answer])).toEqual([
+      ['Distinguishing weak spins with next detectors', 'confirmed'],
+      ['Loudness of non-spinning mergers at 1 Gpc', 'cannot-tell'],
+      ['Spin 0.2 is visible at 60 solar masses', 'confirmed'],
+    ]);
+    expect(answers[2]?.clause).toBe('the lower cut-off is 30 Hz instead of 20 Hz');
+    expect(firstClaim(await resultOf('Recoil of a 2:1 merger', 'official')).candidates[0]).toMatchObject({ id: 'C24:no-sign', standing: 'candidate' });
+  });
+
   it('the loudness is short by √2 at both masses', async () => {
     const result = await resultOf('Loudness of non-spinning mergers at 1 Gpc', 'official');
     expect(firstClaim(result).verdict).toBe('differs');

@@ -19,7 +19,7 @@ export function CoincidenceTable({ claim }: { readonly claim: ResultClaim }) {
               <th scope="row" className="font-normal!">{row.readings.map(({ clause }) => clause).join('; or ')}</th>
               <td className="num">{percent(row.chance)}</td>
               <td className="num">{row.tried}</td>
-              <td>{row.breaks.length > 0 ? `would part ${row.breaks.join(', ')}` : row.explains.length > 0 ? `also ${row.explains.join(', ')}` : '–'}</td>
+              <td>{row.breaks.length > 0 ? `would part ${row.breaks.join(', ')}` : row.explains.length > 0 ? `also ${row.explains.join(', ')}` : '—'}</td>
             </tr>
           ))}
         </tbody>
