@@ -62,6 +62,19 @@ describe('a claim that would agree under another reading', () => {
   }, LONG);
 });
 
+describe('what the samples of a file show', () => {
+  it('speaks for the reading that they fit: a strain declared as ψ₄ is read as strain again', async () => {
+    const declaredAsPsi4 = (sheet: Record<string, unknown>): unknown => {
+      const waveforms = Object.entries(sheet['waveforms'] as Record<string, object>).map(([name, waveform]) => [name, { ...waveform, variable: 'psi4' }]);
+      return { ...sheet, waveforms: Object.fromEntries(waveforms) as unknown };
+    };
+    const claim = claimOf(await explained('loudness', { sheet: declaredAsPsi4 }), 'C1');
+    expect(claim.verdict).toBe('differs');
+    const asStrain = claim.candidates.find(({ id }) => id.includes('C19:strain'));
+    expect(asStrain?.readings.some(({ evidence, evidenceFrom }) => evidence === 'supports' && (evidenceFrom ?? '').length > 20)).toBe(true);
+  }, LONG);
+});
+
 describe('the search', () => {
   it('gives the same bytes twice', async () => {
     const [once, twice] = [await explained('loudness'), await explained('loudness')];

@@ -19,6 +19,14 @@ export interface NoiseFacts {
   readonly sided: 'one' | 'two';
 }
 
+/** What the samples of a file themselves say against its declaration. */
+export interface Shown {
+  readonly convention: string;
+  /** The option that the data speak for, where one is named; null for any other than the declared. */
+  readonly option: string | null;
+  readonly reason: string;
+}
+
 /** A claim of the same sheet and quantity whose number is a reference for another's. */
 export interface SiblingPoint {
   readonly claimId: string;
@@ -38,6 +46,7 @@ export interface FlipContext {
   /** Published curves with their range. */
   readonly curves: readonly { readonly id: string; readonly fLowHz: number; readonly fHighHz: number }[];
   readonly texts: readonly Written[];
+  readonly shown: readonly Shown[];
   readonly siblings: readonly SiblingPoint[];
   /** Redshift at a luminosity distance, for the cosmology in force. */
   readonly redshiftAt: (distanceMpc: number) => number;

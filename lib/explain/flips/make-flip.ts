@@ -2,7 +2,7 @@ import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settin
 import { conventionById } from '../conventions/conventions';
 import { priorWeight, type ConventionId, type ConventionKind } from '../conventions/convention';
 import type { Flip, FlipChange } from '../flip';
-import { evidenceIn, type Telling } from './evidence';
+import { evidenceIn, type Found, type Telling } from './evidence';
 import { isAssumed, type FlipContext } from './flip-context';
 
 /** One convention of a claim, with the ways in which it may be read otherwise. */
@@ -38,10 +38,16 @@ export function makeFlip(context: FlipContext, draft: FlipDraft): Flip {
     prior: priorWeight[convention.commonness],
     common: convention.commonness === 'most',
     assumed: assumed ?? (setting === undefined ? false : isAssumed(context, setting)),
-    ...evidenceIn(context.texts, telling),
+    ...(evidenceOfData(context, draft) ?? evidenceIn(context.texts, telling)),
     change,
     declares: draft.declares ?? declaredBy(context, change),
   };
+}
+
+/** What the samples show weighs before what somebody wrote. */
+function evidenceOfData({ shown }: FlipContext, { convention, option }: FlipDraft): Found | null {
+  const found = shown.find((one) => one.convention === convention && (one.option === null || one.option === option));
+  return found === undefined ? null : { evidence: 'supports', evidenceFrom: found.reason };
 }
 
 /** A mass of a sweep is no setting of the claim: nothing can be declared for it in one word. */

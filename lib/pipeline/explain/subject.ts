@@ -3,12 +3,13 @@ import { halfLastDigit } from '@/lib/claims/claimed';
 import { waveformNames } from '@/lib/claims/claim';
 import { routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
 import type { Measurement } from '@/lib/engine/contract/measurement';
+import { guessWaveform } from '@/lib/engine/guesses/guess-waveform';
 import type { QuantityInputs } from '@/lib/engine/contract/quantity';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { houseCosmology, redshiftAt, type Cosmology } from '@/lib/engine/units/cosmology';
 import type { Flip } from '@/lib/explain/flip';
-import type { FlipContext, NoiseFacts, SiblingPoint, Written } from '@/lib/explain/flips/flip-context';
+import type { FlipContext, NoiseFacts, Shown, SiblingPoint, Written } from '@/lib/explain/flips/flip-context';
 import { flipsOf } from '@/lib/explain/flips/flips-of';
 import type { JudgedClaim, JudgedPoint } from '@/lib/explain/search/node';
 import type { Inputs } from '../read-inputs';
@@ -68,18 +69,29 @@ function judgedPoints({ claim, result }: Weighed): { readonly index: number; rea
 function contextOf({ claim, inputs: resolved, measurement }: Weighed, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingPoint[]): FlipContext {
   const used = new Map(measurement.settings.map((setting) => [setting.name, setting]));
   const cosmology = (used.get('cosmology')?.value as Cosmology | undefined) ?? claim.settings.cosmology ?? houseCosmology;
+  const waveforms = Object.values(resolved.of).flat().filter((waveform): waveform is Waveform => waveform !== undefined);
   return {
     claim,
     used,
     points: measurement.points.map(({ at, value }) => ({ at, value })),
-    waveforms: Object.values(resolved.of).flat().filter((waveform): waveform is Waveform => waveform !== undefined),
+    waveforms,
     noise: noiseFacts(claim, resolved, sheet),
     curves: builtInCurves.map(({ id, fLowHz, fHighHz }) => ({ id, fLowHz, fHighHz })),
     texts: textsOf(claim, sheet, inputs),
+    shown: waveforms.flatMap(shownBy),
     siblings: siblings.filter(({ claimId }) => claimId !== claim.id),
     redshiftAt: (distance) => redshiftAt(distance, cosmology),
   };
 }
+
+/** From here on a guess speaks against a declaration. */
+const SURE = 0.8;
+
+/** What the samples say against the declaration; the unit of time is no reading of one convention. */
+const shownBy = (waveform: Waveform): Shown[] =>
+  guessWaveform(waveform)
+    .filter(({ agrees, confidence, about }) => !agrees && confidence >= SURE && about !== 'time-unit')
+    .map(({ about, convention, proposed, reason }) => ({ convention, option: about === 'variable' ? proposed : null, reason }));
 
 function noiseFacts(claim: Claim, { noise: curve }: QuantityInputs, sheet: ClaimSheet): NoiseFacts | null {
   const declared = claim.noise === null ? undefined : sheet.noise.get(claim.noise);
