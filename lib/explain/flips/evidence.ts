@@ -18,7 +18,8 @@ const AROUND = 40;
 /** The words found with a little of what stands around them, on one line. */
 function quoted({ where, text }: Written, from: number, length: number): string {
   const [start, end] = [Math.max(0, from - AROUND), Math.min(text.length, from + length + AROUND)];
-  const words = text.slice(start, end).replace(/\s+/g, ' ').trim();
+  // A formula cut in the middle is no words.
+  const words = text.slice(start, end).replace(/\${1,2}[^$]*(?:\${1,2}|$)/g, '…').replace(/\s+/g, ' ').trim();
   return `${where}: “${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}”`;
 }
 
