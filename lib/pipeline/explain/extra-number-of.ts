@@ -57,7 +57,8 @@ function readingAlong(along: Asked, node: Node | null, { candidate, clause }: Pi
  */
 export function extraNumberOf(subject: Subject, candidates: readonly Candidate[], tried: readonly TriedNode[], asking: Asking): ExtraNumber | null {
   const parameter = freeOf(subject);
-  const leading = candidates.slice(0, 3);
+  const named = candidates.filter(({ standing }) => standing === 'candidate');
+  const leading = (named.length > 0 ? named : candidates).slice(0, 3);
   const [first] = subject.judged.points;
   if (parameter === null || leading.length === 0 || first === undefined) return null;
   const along = alongGrid(subject, parameter);
