@@ -38,13 +38,10 @@ describe('a claim that would agree under another reading', () => {
     [36.3 / Math.SQRT2, 52.68 / Math.SQRT2].forEach((value, i) => expect(withinOf(first?.values[i] ?? null, value, 0.003 * value)).toBe(true));
   }, LONG);
 
-  it('D4, D12: a mass in the frame of the detector, named first; one number alone may be chance', async () => {
+  it('D4: a mass in the frame of the detector, named first', async () => {
     const [ofSnr] = claimOf(await explained('source-frame'), 'C1').candidates;
     expect(ofSnr).toMatchObject({ id: 'C11:detector', settings: { massFrame: 'detector' } });
     expect(withinOf(ofSnr?.values[0] ?? null, 36.3, 0.003 * 36.3)).toBe(true);
-    const [ofHorizon] = claimOf(await explained('horizon-of-sixty'), 'C1').candidates;
-    expect(ofHorizon).toMatchObject({ id: 'C11:detector', standing: 'coincidence' });
-    expect(ofHorizon?.chance).toBeGreaterThan(0.05);
   }, LONG);
 
   it('D7: modes of negative m without their sign, by the whole speed of the recoil', async () => {
