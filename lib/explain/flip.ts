@@ -57,6 +57,8 @@ export interface Flip {
   readonly evidence: Evidence;
   /** Where the evidence stands, in words; null without any. */
   readonly evidenceFrom: string | null;
+  /** It stands in a file itself, in its head or its samples: that a statement mentions a word excuses no chance. */
+  readonly inFile: boolean;
   readonly change: FlipChange;
   /** What a sheet would have to say for it, as far as its settings can; empty where none does. */
   readonly declares: Readonly<Partial<DeclaredSettings>>;

@@ -17,7 +17,7 @@ export function flipOf(id: string, more: Partial<Flip> = {}): Flip {
   const change: FlipChange = { kind: 'rerun', settings: {} };
   return {
     id, convention, clause: `${id} holds`, kind: (more.change ?? change).kind, group: groupOf[convention] ?? 'units', prior: priorWeight[commonness(convention)], common: commonness(convention) === 'most',
-    assumed: false, evidence: 'none', evidenceFrom: null, change, declares: {}, ...more,
+    assumed: false, evidence: 'none', evidenceFrom: null, inFile: false, change, declares: {}, ...more,
   };
 }
 

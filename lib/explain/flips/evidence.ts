@@ -10,6 +10,12 @@ export interface Telling {
 export interface Found {
   readonly evidence: Evidence;
   readonly evidenceFrom: string | null;
+  readonly inFile: boolean;
+}
+
+interface Passage {
+  readonly words: string;
+  readonly inFile: boolean;
 }
 
 /** Letters on either side of the words found. */
@@ -23,11 +29,12 @@ function quoted({ where, text }: Written, from: number, length: number): string 
   return `${where}: “${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}”`;
 }
 
-function firstWith(texts: readonly Written[], patterns: readonly RegExp[] = []): string | undefined {
-  for (const written of texts)
+/** Heads of files before the statement. */
+function firstWith(texts: readonly Written[], patterns: readonly RegExp[] = []): Passage | undefined {
+  for (const written of [...texts].sort((p, q) => Number(q.inFile) - Number(p.inFile)))
     for (const pattern of patterns) {
       const found = pattern.exec(written.text);
-      if (found) return quoted(written, found.index, found[0].length);
+      if (found) return { words: quoted(written, found.index, found[0].length), inFile: written.inFile };
     }
   return undefined;
 }
@@ -36,9 +43,9 @@ function firstWith(texts: readonly Written[], patterns: readonly RegExp[] = []):
 export function evidenceIn(texts: readonly Written[], telling: Telling): Found {
   const speaksFor = firstWith(texts, telling.supports);
   const speaksAgainst = firstWith(texts, telling.contradicts);
-  if (speaksFor !== undefined && speaksAgainst === undefined) return { evidence: 'supports', evidenceFrom: speaksFor };
-  if (speaksAgainst !== undefined && speaksFor === undefined) return { evidence: 'contradicts', evidenceFrom: speaksAgainst };
-  return { evidence: 'none', evidenceFrom: null };
+  if (speaksFor !== undefined && speaksAgainst === undefined) return { evidence: 'supports', evidenceFrom: speaksFor.words, inFile: speaksFor.inFile };
+  if (speaksAgainst !== undefined && speaksFor === undefined) return { evidence: 'contradicts', evidenceFrom: speaksAgainst.words, inFile: speaksAgainst.inFile };
+  return { evidence: 'none', evidenceFrom: null, inFile: false };
 }
 
 const escaped = (text: string): string => text.replace(/[.*+?^${}()|[\]\\]/g, String.raw`\$&`);

@@ -6,8 +6,9 @@ import type { Waveform } from '@/lib/engine/contract/waveform';
 
 /** Words that came with the sheet: its statement, comments in the heads of files. */
 export interface Written {
-  /** The file, or `statement`. */
+  /** The file, or the statement. */
   readonly where: string;
+  readonly inFile: boolean;
   readonly text: string;
 }
 

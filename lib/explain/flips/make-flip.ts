@@ -47,7 +47,7 @@ export function makeFlip(context: FlipContext, draft: FlipDraft): Flip {
 /** What the samples show weighs before what somebody wrote. */
 function evidenceOfData({ shown }: FlipContext, { convention, option }: FlipDraft): Found | null {
   const found = shown.find((one) => one.convention === convention && (one.option === null || one.option === option));
-  return found === undefined ? null : { evidence: 'supports', evidenceFrom: found.reason };
+  return found === undefined ? null : { evidence: 'supports', evidenceFrom: found.reason, inFile: true };
 }
 
 /** A mass of a sweep is no setting of the claim: nothing can be declared for it in one word. */

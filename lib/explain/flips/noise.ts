@@ -5,14 +5,14 @@ import { loudnessChange, makeFlips, type FlipDraft, type FlipsOfConvention } fro
 const amplitudeWords = [/\bASD\b/i, /amplitude\s+spectr/i, /(?:\/|per\s+)\s*(?:sqrt|√)\s*\(?\s*Hz/i, /Hz\s*\^?\s*\(?\s*-\s*(?:1\/2|0\.5)/i, /\bh_?n\b/];
 const powerWords = [/\bPSD\b/i, /power\s+spectr/i, /(?:\/|per\s+)\s*Hz\b/i, /Hz\s*\^?\s*\(?\s*-\s*1(?!\/)/i];
 
-/** The words of a head that name the column support a confusion between the two, whichever way it went. */
+/** A heading that names amplitudes, over a column declared so, is what can be missed; one that names power can be squared once more. */
 export const columnMeaning: FlipsOfConvention = (context) => {
   if (context.noise === null) return [];
   const table = context.noise.column !== null;
-  const named = { supports: table ? [...amplitudeWords, ...powerWords] : [] };
+  const ofColumn = (column: 'asd' | 'psd', words: readonly RegExp[]) => ({ supports: context.noise?.column === column ? words : [] });
   const drafts: (FlipDraft | null)[] = [
-    { convention: 'C01', option: 'root', clause: 'the noise column, an amplitude density, is used as if it were the power density', change: rerun({ edit: 'noise-power', power: 0.5 }), telling: named },
-    { convention: 'C01', option: 'square', clause: 'the noise, a power density already, is squared once more', change: rerun({ edit: 'noise-power', power: 2 }), telling: named },
+    { convention: 'C01', option: 'root', clause: 'the noise column, an amplitude density, is used as if it were the power density', change: rerun({ edit: 'noise-power', power: 0.5 }), telling: ofColumn('asd', amplitudeWords) },
+    { convention: 'C01', option: 'square', clause: 'the noise, a power density already, is squared once more', change: rerun({ edit: 'noise-power', power: 2 }), telling: ofColumn('psd', powerWords) },
     table ? { convention: 'C01', option: 'characteristic', clause: 'the noise column is a characteristic strain, to be divided by √f', change: rerun({ edit: 'noise-times-frequency', power: -1 }), telling: { supports: [/characteristic/i, /\bh_?c\b/] } } : null,
     table ? { convention: 'C01', option: 'not-characteristic', clause: 'the noise column is multiplied by √f', change: rerun({ edit: 'noise-times-frequency', power: 1 }) } : null,
   ];

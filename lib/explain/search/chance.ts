@@ -1,4 +1,4 @@
-import { drawAt } from './draws';
+import { drawAt } from '@/lib/kernel/counted-draw';
 import { onScale, reach, uncertaintyBeside, type ScaledClaim } from './scaled-claim';
 import { drawn, lawAt, type UnexplainedLaw } from './unexplained';
 

@@ -1,7 +1,7 @@
 import type { Candidate, SearchOfClaim } from '../candidate';
 import { chanceOf, decoyMisfits, decoysOf, type Misfits } from './chance';
 import { classesOf, fittingOf, type ReadingClass } from './classes';
-import { seedOf } from './draws';
+import { seedOf } from './seed';
 import type { JudgedClaim, TriedNode } from './node';
 import { resolutionOf } from './scaled-claim';
 import { sheetOf, type Sheet } from './trials';

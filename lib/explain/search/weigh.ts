@@ -21,7 +21,7 @@ export function weigh(sheet: Sheet, c: number, { trials, changes }: ReadingClass
   const { claim } = sheet.claims[c]!;
   const first = trials[0]!;
   const readings = trials.map(({ node }) => readingOf(node));
-  const grounds = groundsOf(sheet, c, first, { changes, chance, supported: readings.some(({ evidence }) => evidence === 'supports') });
+  const grounds = groundsOf(sheet, c, first, { changes, chance, supported: readings.some(({ evidence }) => evidence === 'supports'), inFile: trials.some(({ node }) => node.flips.some(({ evidence, inFile }) => evidence === 'supports' && inFile)) });
   const facts = {
     id: first.node.id,
     settings: settingsOf(first.node),
@@ -38,7 +38,7 @@ export function weigh(sheet: Sheet, c: number, { trials, changes }: ReadingClass
   return { candidate: { ...facts, sentence: candidateSentence(claim, facts) }, lnOdds: first.lnOdds, assumed: trials.some(({ node }) => node.flips.every(({ assumed }) => assumed)) };
 }
 
-function groundsOf(sheet: Sheet, c: number, { held, lnOdds }: Trial, known: Pick<Grounds, 'changes' | 'chance' | 'supported'>): Grounds {
+function groundsOf(sheet: Sheet, c: number, { held, lnOdds }: Trial, known: Pick<Grounds, 'changes' | 'chance' | 'supported' | 'inFile'>): Grounds {
   const others = sheet.claims.map(({ claim }, j) => ({ claim, j })).filter(({ j }) => j !== c);
   const scaled = sheet.claims[c]!;
   return {

@@ -103,8 +103,8 @@ function noiseFacts(claim: Claim, { noise: curve }: QuantityInputs, sheet: Claim
 
 /** What the author wrote, beside the numbers: the statement and the heads of the claim's own files. */
 function textsOf(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Written[] {
-  const statement = [sheet.title, sheet.statement].filter((text) => text !== '').map((text) => ({ where: 'the statement', text }));
+  const statement = [sheet.title, sheet.statement].filter((text) => text !== '').map((text) => ({ where: 'the statement', inFile: false, text }));
   const ofWaveforms = waveformNames(claim.of).flatMap((name) => inputs.waveforms.get(name)?.writing ?? []);
   const ofNoise = claim.noise === null ? [] : (inputs.noise.get(claim.noise)?.writing ?? []);
-  return [...statement, ...ofWaveforms, ...ofNoise];
+  return [...statement, ...[...ofWaveforms, ...ofNoise].map((written) => ({ ...written, inFile: true }))];
 }

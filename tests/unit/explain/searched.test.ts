@@ -22,11 +22,14 @@ describe('the catalogue and the search', () => {
 });
 
 describe('words that came with a sheet', () => {
-  const texts = [{ where: 'noise.txt', text: 'f (Hz)   ASD (Hz^-1/2), from 20 Hz on' }];
+  const texts = [{ where: 'noise.txt', inFile: true, text: 'f (Hz)   ASD (Hz^-1/2), from 20 Hz on' }];
 
   it('speak for a reading, with the place and the words around them', () => {
     const found = evidenceIn(texts, { supports: [/\bASD\b/] });
-    expect(found).toEqual({ evidence: 'supports', evidenceFrom: 'noise.txt: “f (Hz) ASD (Hz^-1/2), from 20 Hz on”' });
+    expect(found).toEqual({ evidence: 'supports', evidenceFrom: 'noise.txt: “f (Hz) ASD (Hz^-1/2), from 20 Hz on”', inFile: true });
+    const statement = [{ where: 'the statement', inFile: false, text: 'The ASD of both' }];
+    expect(evidenceIn(statement, { supports: [/\bASD\b/] }).inFile).toBe(false);
+    expect(evidenceIn([...statement, ...texts], { supports: [/\bASD\b/] }).inFile).toBe(true);
   });
 
   it('settle nothing where they speak on both sides, or on none', () => {

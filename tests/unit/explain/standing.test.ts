@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { standingOf, type Grounds } from '@/lib/explain/search/standing';
 
-const single: Grounds = { changes: 1, chance: 0.05, supported: false, points: 1, explains: [], breaks: [], beatsDeclared: true };
+const single: Grounds = { changes: 1, chance: 0.05, supported: false, inFile: false, points: 1, explains: [], breaks: [], beatsDeclared: true };
 const pair: Grounds = { ...single, changes: 2, chance: 0.01 };
 
 describe('one change', () => {
@@ -10,8 +10,9 @@ describe('one change', () => {
     expect(standingOf({ ...single, chance: 0.0501 })).toBe('coincidence');
   });
 
-  it('stands however often chance does as well where head or statement speaks for it', () => {
-    expect(standingOf({ ...single, chance: 0.6, supported: true })).toBe('candidate');
+  it('stands however often chance does as well where the head or the samples of a file speak for it, not where the statement has the word', () => {
+    expect(standingOf({ ...single, chance: 0.6, supported: true, inFile: true })).toBe('candidate');
+    expect(standingOf({ ...single, chance: 0.6, supported: true })).toBe('coincidence');
   });
 });
 

@@ -1,5 +1,6 @@
 import { powerOfTwoFrom, transformOfSize } from '@/lib/engine/fourier/transform';
 import type { CrossSpectrum } from './cross-spectrum';
+import type { LagSums } from './lag-sums';
 
 /** What is maximised over the shift: the modulus (a phase or rotation is free) or the real part (it is not). */
 export type Objective = 'modulus' | 'real';
@@ -12,21 +13,12 @@ export interface LagPeak {
   readonly value: number;
 }
 
-interface Derivatives {
-  re: number;
-  im: number;
-  re1: number;
-  im1: number;
-  re2: number;
-  im2: number;
-}
-
 const TURN = 2 * Math.PI;
 /** Sines are taken anew every so many bins; between them a recurrence is exact to 1e-15. */
 const BLOCK = 256;
 
 /** Adds Σ q_j e^{±2πi(first+j)x} and its first two derivatives in x (in units of 2π) to the sums. */
-function accumulate(sums: Derivatives, re: Float64Array, im: Float64Array, first: number, x: number, sign: 1 | -1): void {
+function accumulate(sums: LagSums, re: Float64Array, im: Float64Array, first: number, x: number, sign: 1 | -1): void {
   const n = re.length;
   const stepRe = Math.cos(TURN * x);
   const stepIm = sign * Math.sin(TURN * x);
@@ -67,14 +59,14 @@ function accumulate(sums: Derivatives, re: Float64Array, im: Float64Array, first
 }
 
 /** c(x) and its derivatives with respect to 2πx. */
-export function evaluateAt(c: CrossSpectrum, x: number): Derivatives {
+export function evaluateAt(c: CrossSpectrum, x: number): LagSums {
   const sums = { re: 0, im: 0, re1: 0, im1: 0, re2: 0, im2: 0 };
   accumulate(sums, c.plusRe, c.plusIm, c.first, x, 1);
   if (c.minusRe !== null && c.minusIm !== null) accumulate(sums, c.minusRe, c.minusIm, c.first, x, -1);
   return sums;
 }
 
-const objectiveValue = (d: Derivatives, objective: Objective): number => (objective === 'real' ? d.re : d.re * d.re + d.im * d.im);
+const objectiveValue = (d: LagSums, objective: Objective): number => (objective === 'real' ? d.re : d.re * d.re + d.im * d.im);
 
 /** Newton steps on |c|² or Re c; a step that would leave the cell or does not climb is halved. */
 function climb(c: CrossSpectrum, start: number, cell: number, objective: Objective): LagPeak {
@@ -101,7 +93,7 @@ function climb(c: CrossSpectrum, start: number, cell: number, objective: Objecti
   return peakAt(d, x, objective);
 }
 
-const peakAt = (d: Derivatives, x: number, objective: Objective): LagPeak => ({
+const peakAt = (d: LagSums, x: number, objective: Objective): LagPeak => ({
   x,
   re: d.re,
   im: d.im,

@@ -1,16 +1,7 @@
 import { nodeOffsets } from './chebyshev-blocks';
 import type { CompressedBins } from './compressed-bins';
+import type { LagSums } from './lag-sums';
 import type { NodeBand } from './node-band';
-
-/** Σ q e^{2πikδ} and its first two derivatives with respect to 2πδ. */
-export interface LagSums {
-  re: number;
-  im: number;
-  re1: number;
-  im1: number;
-  re2: number;
-  im2: number;
-}
 
 const TURN = 2 * Math.PI;
 const MOST_NODES = 16;
