@@ -4,6 +4,7 @@ import type { RecordSlots } from '@/app/_ui/claim/record-view';
 import { formatDay } from '@/app/views/dates';
 import type { Candidate } from '@/lib/explain/candidate';
 import { answerToCandidate, type CandidateAnswerView } from '@/lib/services/candidates/candidate-answers';
+import type { LodgedView } from '@/lib/services/submissions/submission-view';
 import { AnswerCandidate } from './answer-candidate';
 import { AskNumber } from './ask-number';
 import { TakeOver } from './take-over';
@@ -18,9 +19,14 @@ export interface CandidateFacts {
   /** The revision is being written, so that a confirmed reading can be declared in it. */
   readonly mayTakeOver: boolean;
   readonly mayAsk: boolean;
+  /** What has been said in threads of a claim: a number is asked for once. */
+  readonly said?: (claimId: string) => readonly string[];
   /** Where a variation with these settings can be tried; null where none can. */
   readonly varyAt: string | null;
 }
+
+/** A variation is of the latest lodged revision: from an earlier one it would try something else. */
+export const isLatest = ({ revision, revisions }: Pick<LodgedView, 'revision' | 'revisions'>): boolean => revisions.every(({ number }) => number <= revision.number);
 
 function Answer({ answer }: { readonly answer: CandidateAnswerView }) {
   return (
@@ -36,7 +42,7 @@ function tryHref(varyAt: string, claimId: string, { settings }: Candidate): Rout
 }
 
 /** What stands under a candidate and under the number that tells candidates apart, for whoever looks. */
-export function candidateSlots({ submissionId, runId, answers, mayAnswer, mayTakeOver, mayAsk, varyAt }: CandidateFacts): Pick<RecordSlots, 'candidate' | 'extraNumber'> {
+export function candidateSlots({ submissionId, runId, answers, mayAnswer, mayTakeOver, mayAsk, said = () => [], varyAt }: CandidateFacts): Pick<RecordSlots, 'candidate' | 'extraNumber'> {
   return {
     candidate: (claimId, candidate) => {
       const answer = answerToCandidate(answers, runId, claimId, candidate.id);
@@ -51,6 +57,6 @@ export function candidateSlots({ submissionId, runId, answers, mayAnswer, mayTak
         </>
       );
     },
-    ...(mayAsk ? { extraNumber: (claimId, extra) => <AskNumber submissionId={submissionId} claimId={claimId} extra={extra} /> } : {}),
+    ...(mayAsk ? { extraNumber: (claimId, extra) => <AskNumber submissionId={submissionId} claimId={claimId} extra={extra} asked={said(claimId).includes(extra.sentence)} /> } : {}),
   };
 }

@@ -42,13 +42,13 @@ const oddL = ({ waveforms }: FlipContext): boolean => waveforms.some(({ content 
 
 export const modeLabel: FlipsOfConvention = (context) =>
   couples.has(context.claim.quantity.id) && severalModes(context) && gravitational(context)
-    ? makeFlips(context, [{ convention: 'C23', option: 'relabel', clause: 'm is read as −m, without the sign (−1)^ℓ that goes with it', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'relabel-m' }] }, exchange: true }])
+    ? makeFlips(context, [{ convention: 'C23', option: 'relabel', clause: 'm is read as −m, without the minus sign that odd ℓ then takes', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'relabel-m' }] }, exchange: true }])
     : [];
 
 export const negativeModes: FlipsOfConvention = (context) => {
   if (!gravitational(context) || !mirrored(context)) return [];
   const drafts: (FlipDraft | null)[] = [
-    oddL(context) ? { convention: 'C24', option: 'no-sign', clause: 'modes of negative m are the conjugate of their partner, without (−1)^ℓ', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'mirror-sign' }] }, assumed: context.waveforms.every(({ negativeM }) => negativeM === null) } : null,
+    oddL(context) ? { convention: 'C24', option: 'no-sign', clause: 'modes of negative m are the plain conjugate of their partner, without the minus sign of odd ℓ', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'mirror-sign' }] }, assumed: context.waveforms.every(({ negativeM }) => negativeM === null) } : null,
     { convention: 'C24', option: 'absent', clause: 'modes of negative m are left out', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'drop-negative-m' }] }, assumed: context.waveforms.every(({ negativeM }) => negativeM === null) },
   ];
   return makeFlips(context, drafts);

@@ -16,7 +16,7 @@ import { getReview } from '@/lib/services/submissions/get-lodged';
 import type { LodgedView } from '@/lib/services/submissions/submission-view';
 import { listVariations } from '@/lib/services/variations/list-variations';
 import { ClaimDiscussion } from './claim-discussion';
-import { candidateSlots } from '../../candidates/candidate-slots';
+import { candidateSlots, isLatest } from '../../candidates/candidate-slots';
 import { Letters } from './letters';
 import { changeAt, ThreadAnchor } from './thread-anchor';
 import { DeskPanel } from './desk-panel';
@@ -58,7 +58,7 @@ function slotsFor({ lodged, desk, candidates, variations }: Loaded, asked: Asked
     anchor: (claimId, point) => <ThreadAnchor threads={desk.threads} claimId={claimId} at={pointsOf(claimId)[point]?.at ?? {}} single={pointsOf(claimId).length === 1} />,
     change: (claimId, point) => changeAt(desk.changes, claimId, pointsOf(claimId)[point]?.at ?? {}),
     action: variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result, variations, asked }),
-    ...candidateSlots({ submissionId: lodged.id, runId: lodged.run?.id ?? null, answers: lodged.candidateAnswers, mayAnswer: false, mayTakeOver: false, mayAsk: desk.may.openThread, varyAt: variations ? `/review/${lodged.id}` : null }),
+    ...candidateSlots({ submissionId: lodged.id, runId: lodged.run?.id ?? null, answers: lodged.candidateAnswers, mayAnswer: false, mayTakeOver: false, mayAsk: desk.may.openThread, said: (claimId) => desk.threads.filter(({ anchor }) => anchor.claim === claimId).flatMap(({ comments }) => comments.map(({ body }) => body)), varyAt: variations && isLatest(lodged) ? `/review/${lodged.id}` : null }),
     discussion: (claimId) => <ClaimDiscussion desk={desk} claimId={claimId} points={pointsOf(claimId)} variations={variations?.variations.filter((v) => v.claimId === claimId) ?? []} />,
     actions: <HeadActions desk={desk} lodged={lodged} />,
     aside: <DeskPanel desk={desk} candidates={candidates} />,

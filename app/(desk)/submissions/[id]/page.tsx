@@ -16,7 +16,7 @@ import { getDraft } from '@/lib/services/submissions/get-draft';
 import { getReview } from '@/lib/services/submissions/get-lodged';
 import { listVariations } from '@/lib/services/variations/list-variations';
 import { ActButton } from '../../act-parts';
-import { candidateSlots } from '../../candidates/candidate-slots';
+import { candidateSlots, isLatest } from '../../candidates/candidate-slots';
 import { confirmAuthorship, revise } from '../../compose/actions';
 import { ClaimDiscussion } from '../../review/[id]/claim-discussion';
 import { Letters } from '../../review/[id]/letters';
@@ -55,7 +55,7 @@ function slotsFor({ you, draft, lodged, desk, variations }: Loaded, asked: Asked
     anchor: (claimId, point) => <ThreadAnchor threads={desk.threads} claimId={claimId} at={pointsOf(claimId)[point]?.at ?? {}} single={pointsOf(claimId).length === 1} />,
     change: (claimId, point) => changeAt(desk.changes, claimId, pointsOf(claimId)[point]?.at ?? {}),
     action: variationSlot({ revision: { submissionId: lodged.id, revision: lodged.revision.number, sheet: lodged.revision.sheet }, result, variations, asked }),
-    ...candidateSlots({ submissionId: lodged.id, runId: lodged.run?.id ?? null, answers: lodged.candidateAnswers, mayAnswer: lodged.may.answerCandidates, mayTakeOver: draft.may.edit, mayAsk: false, varyAt: variations ? `/submissions/${lodged.id}` : null }),
+    ...candidateSlots({ submissionId: lodged.id, runId: lodged.run?.id ?? null, answers: lodged.candidateAnswers, mayAnswer: lodged.may.answerCandidates, mayTakeOver: draft.may.edit, mayAsk: false, varyAt: variations && isLatest(lodged) ? `/submissions/${lodged.id}` : null }),
     discussion: (claimId) => <ClaimDiscussion desk={desk} claimId={claimId} points={pointsOf(claimId)} variations={variations?.variations.filter((v) => v.claimId === claimId) ?? []} />,
     actions: <Actions draft={draft} shown={lodged.revision.number} />,
     aside: <NextStep you={you} draft={draft} desk={desk} />,

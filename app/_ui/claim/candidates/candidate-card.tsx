@@ -1,7 +1,7 @@
 import Link from 'next/link';
 import { useId, type ReactNode } from 'react';
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
-import { NumberCell } from '../../math/number-cell';
+import { NumberCell, PrintedNumber } from '../../math/number-cell';
 import { formatSetting, settingLabel } from '../setting-names';
 
 type Candidate = ResultClaim['candidates'][number];
@@ -21,6 +21,17 @@ function significantOf({ printed }: ResultPoint): number {
   return Math.min(12, Math.max(3, digits.length + 1));
 }
 
+/** The last place that is printed of a number with so many digits. */
+const lastPlace = (value: number, significant: number): number => 10 ** (Math.floor(Math.log10(Math.abs(value))) - significant + 1);
+
+/** U is that of the recomputed number: a reading is computed by route A alone. */
+function UncertaintyBeside({ point, value, unit }: { readonly point: ResultPoint; readonly value: number; readonly unit: string }) {
+  const u = point.expandedUncertainty;
+  if (u === null) return <><i>U</i> unknown</>;
+  if (value !== 0 && u < 0.5 * lastPlace(value, significantOf(point))) return <><i>U</i> below these digits</>;
+  return <>± <NumberCell value={u} significant={2} unit={unit} /></>;
+}
+
 const pointWords = ({ at }: ResultPoint): string => Object.entries(at).map(([name, value]) => `${settingLabel(name)} ${formatSetting(name, value)}`).join(', ');
 
 /** The number at each point under the reading, beside what was claimed there. */
@@ -32,7 +43,8 @@ function Values({ claim, candidate }: Pick<CandidateCardProps, 'claim' | 'candid
         <div key={i}>
           <dt className="text-ink-2">{pointWords(point) || 'The number'}</dt>
           <dd className="text-[18px]/[24px] font-semibold tabular-nums"><NumberCell value={value} significant={significantOf(point)} unit={claim.unit} /></dd>
-          <dd className="text-small text-ink-2">claimed {point.printed}</dd>
+          <dd className="text-small text-ink-2"><UncertaintyBeside point={point} value={value} unit={claim.unit} /></dd>
+          <dd className="text-small text-ink-2">claimed <PrintedNumber printed={point.printed} unit={claim.unit} /></dd>
         </div>
       ))}
     </dl>
