@@ -90,6 +90,7 @@ const search = z.looseObject({
   stoppedBecause: z.string().nullable(),
   extraNumber: z.looseObject({ setting: z.string(), at: z.number(), unit: z.string(), predictions: z.array(z.looseObject({ candidate: z.string().nullable(), value: z.number(), expandedUncertainty: nullable })), apart: z.number(), sentence: z.string() }).nullable(),
   sentence: z.string(),
+  readings: z.array(z.looseObject({ id: z.string(), clause: z.string().optional(), values: z.array(nullable).optional(), because: z.string().optional() })),
 });
 
 export const resultClaimSchema = z.looseObject({

@@ -54,6 +54,16 @@ export interface ExtraNumber {
   readonly sentence: string;
 }
 
+/** One reading that was tried, with its numbers at the points asked or why there are none. */
+export interface TriedReading {
+  /** Flips of the node. */
+  readonly id: string;
+  /** Of single readings. */
+  readonly clause?: string;
+  readonly values?: readonly (number | null)[];
+  readonly because?: string;
+}
+
 /** What the search of one claim did. */
 export interface SearchOfClaim {
   /** Readings that were tried, and of them those that gave no number. */
@@ -67,4 +77,6 @@ export interface SearchOfClaim {
   readonly extraNumber: ExtraNumber | null;
   /** What came of it, in words. */
   readonly sentence: string;
+  /** All that was tried, failures too. */
+  readonly readings: readonly TriedReading[];
 }

@@ -83,6 +83,8 @@ describe('the search', () => {
     expect(search?.stoppedBecause).toContain('time');
     expect(search?.tried).toBeGreaterThan(5);
     expect(search?.left).toBeGreaterThan(0);
+    expect(search?.readings).toHaveLength(search?.tried ?? 0);
+    for (const reading of search?.readings ?? []) expect('because' in reading || reading.values?.length === 2).toBe(true);
   }, LONG);
 
   it('leaves claims that agree alone', async () => {

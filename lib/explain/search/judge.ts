@@ -10,7 +10,7 @@ import { listed, weigh } from './weigh';
 /** What the search of one claim found and what it took; how far it got is known to whoever ran the readings. */
 export interface Judged {
   readonly candidates: readonly Candidate[];
-  readonly search: Omit<SearchOfClaim, 'left' | 'stoppedBecause' | 'extraNumber' | 'sentence'>;
+  readonly search: Omit<SearchOfClaim, 'left' | 'stoppedBecause' | 'extraNumber' | 'sentence' | 'readings'>;
   /** Readings under which the claim would agree; more than are listed, at times. */
   readonly fitting: number;
   /** How often two numbers were compared: what judging took, counted. */

@@ -2,7 +2,7 @@ import type { Candidate, SearchOfClaim } from '../candidate';
 import { noneSentence } from './none-sentence';
 
 /** What the search of a claim came to: none is an answer, and how far it got belongs to it. */
-export function searchSentence(search: Omit<SearchOfClaim, 'sentence' | 'extraNumber'>, candidates: readonly Candidate[]): string {
+export function searchSentence(search: Omit<SearchOfClaim, 'sentence' | 'extraNumber' | 'readings'>, candidates: readonly Candidate[]): string {
   const ended = search.stoppedBecause === null ? '' : ` The search ended early: ${search.stoppedBecause}.`;
   if (candidates.length === 0) return `${noneSentence(search)}${ended}`;
   const none = candidates.some(({ standing }) => standing === 'candidate') ? '' : 'None: nothing that was tried stands out from chance. ';

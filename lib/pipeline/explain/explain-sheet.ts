@@ -10,6 +10,7 @@ import { PredictionCollector } from './collect-predictions';
 import { EditedInputs } from './edit-inputs';
 import { extraNumberOf } from './extra-number-of';
 import type { Asking } from './predict';
+import { atAllPoints, triedReadings } from './tried-readings';
 import { subjectOf, type Subject, type Weighed } from './subject';
 
 /** What the search says of one claim. */
@@ -58,17 +59,9 @@ export function explainSheet(sheet: ClaimSheet, inputs: Inputs, weighed: readonl
     const extraNumber = how.outOfTime() ? null : extraNumberOf(subject, found.candidates, tried, asking);
     const reach = { ...found.search, left: left.get(subject.judged.id) ?? 0, stoppedBecause };
     explained.set(subject.judged.id, {
-      candidates: found.candidates.map((candidate) => atAllPoints(candidate, subject)),
-      search: { ...reach, extraNumber, sentence: searchSentence(reach, found.candidates) },
+      candidates: found.candidates.map((candidate) => ({ ...candidate, values: atAllPoints(candidate.values, subject) })),
+      search: { ...reach, extraNumber, sentence: searchSentence(reach, found.candidates), readings: triedReadings(subject, tried) },
     });
   }
   return explained;
-}
-
-/** Values stand at the claim's own points again; those that were not asked have none. */
-function atAllPoints(candidate: Candidate, { asked: { claim, points } }: Subject): Candidate {
-  if (claim.claimed.length === points.length) return candidate;
-  const values: (number | null)[] = claim.claimed.map(() => null);
-  points.forEach((index, k) => (values[index] = candidate.values[k] ?? null));
-  return { ...candidate, values };
 }

@@ -4,6 +4,7 @@ import type { ResultClaim } from '@/lib/pipeline/result';
 import type { RecordSlots } from '../record-view';
 import { CandidateCard } from './candidate-card';
 import { CoincidenceTable } from './coincidence-table';
+import { TriedTable } from './tried-table';
 
 interface CandidatesPartProps {
   readonly claim: ResultClaim;
@@ -22,6 +23,7 @@ export function CandidatesPart({ claim, slots }: CandidatesPartProps): ReactNode
       {shown.map((candidate, i) => <CandidateCard key={candidate.id} claim={claim} candidate={candidate} place={`Candidate ${i + 1} of ${shown.length}`} below={slots.candidate?.(claim.id, candidate)} />)}
       <p className="text-ui">{search.sentence}</p>
       <CoincidenceTable claim={claim} />
+      <TriedTable claim={claim} />
       {search.extraNumber && (
         <div className="grid gap-2 text-ui">
           <p className="max-w-[66ch]">{search.extraNumber.sentence}</p>
