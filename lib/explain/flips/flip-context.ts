@@ -17,7 +17,6 @@ export interface NoiseFacts {
   readonly curve: NoiseCurve;
   /** Null for a built-in curve. */
   readonly column: 'asd' | 'psd' | 'characteristic' | null;
-  readonly sided: 'one' | 'two';
 }
 
 /** What the samples of a file themselves say against its declaration. */
@@ -28,12 +27,10 @@ export interface Shown {
   readonly reason: string;
 }
 
-/** A claim of the same sheet and quantity whose number is a reference for another's. */
-export interface SiblingPoint {
+/** A claim of the same sheet and quantity whose number may have been carried on to another's. */
+export interface SiblingClaim {
   readonly claimId: string;
-  readonly value: number;
   readonly fieldGauss: number | null;
-  readonly totalMassMsun: number | null;
 }
 
 /** Everything that decides how one claim could be read otherwise. */
@@ -48,7 +45,7 @@ export interface FlipContext {
   readonly curves: readonly { readonly id: string; readonly fLowHz: number; readonly fHighHz: number }[];
   readonly texts: readonly Written[];
   readonly shown: readonly Shown[];
-  readonly siblings: readonly SiblingPoint[];
+  readonly siblings: readonly SiblingClaim[];
   /** Redshift at a luminosity distance, for the cosmology in force. */
   readonly redshiftAt: (distanceMpc: number) => number;
 }

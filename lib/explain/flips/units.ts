@@ -1,5 +1,5 @@
 import type { BinaryFacts } from '@/lib/engine/contract/waveform';
-import { atPoints, inForce, isSwept, numberInForce, takes, type FlipContext, type SiblingPoint } from './flip-context';
+import { atPoints, inForce, isSwept, numberInForce, takes, type FlipContext, type SiblingClaim } from './flip-context';
 import { makeFlips, type FlipDraft, type FlipsOfConvention } from './make-flip';
 
 const factor = (convention: FlipDraft['convention'], option: string, k: number | readonly number[], clause: string, rest: Partial<FlipDraft> = {}): FlipDraft => ({ convention, option, clause, change: { kind: 'factor', factor: k }, ...rest });
@@ -73,7 +73,7 @@ export const fieldLaw: FlipsOfConvention = (context) => {
 
 /** The claim of the same quantity that stands next in the sheet and has another field. */
 function siblingField({ siblings }: FlipContext, own: number | null): number | null {
-  const others = siblings.filter((one: SiblingPoint) => one.fieldGauss !== null && one.fieldGauss !== own);
+  const others = siblings.filter((one: SiblingClaim) => one.fieldGauss !== null && one.fieldGauss !== own);
   return others[0]?.fieldGauss ?? null;
 }
 

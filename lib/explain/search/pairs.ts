@@ -8,7 +8,7 @@ const mayMeet = (a: Flip, b: Flip): boolean => a.group !== b.group && a.conventi
 
 const byId = (a: { readonly id: string }, b: { readonly id: string }): number => (a.id < b.id ? -1 : a.id > b.id ? 1 : 0);
 
-export const idOf = (flips: Node['flips']): string => flips.map(({ id }) => id).join(' + ');
+const idOf = (flips: Node['flips']): string => flips.map(({ id }) => id).join(' + ');
 
 /** One reading a flip. */
 export const singlesOf = (flips: readonly Flip[]): Node[] => [...flips].sort(byId).map((flip) => ({ id: flip.id, flips: [flip] }));

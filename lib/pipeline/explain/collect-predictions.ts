@@ -4,7 +4,7 @@ import type { DeclaredSettings } from '@/lib/engine/contract/settings';
 import type { Flip } from '@/lib/explain/flip';
 import { fits } from '@/lib/explain/search/fits';
 import type { Node, Prediction, TriedNode } from '@/lib/explain/search/node';
-import { pairPrediction, pairsOf } from '@/lib/explain/search/pairs';
+import { pairPrediction, pairsOf, singlesOf } from '@/lib/explain/search/pairs';
 import { budget, costOf } from './cost';
 import { factorsAt, rerunOf, rerunsOf, type Rerun } from './node-values';
 import { predict, type Asking } from './predict';
@@ -62,10 +62,10 @@ export class PredictionCollector {
   }
 
   private singles(subject: Subject, onShare: (share: number) => void): void {
-    const flips = [...subject.flips].sort(inOrder);
-    flips.forEach((flip, k) => {
-      onShare(k / flips.length);
-      this.ask(subject, { id: flip.id, flips: [flip] });
+    const nodes = singlesOf(subject.flips).sort((p, q) => inOrder(p.flips[0], q.flips[0]));
+    nodes.forEach((node, k) => {
+      onShare(k / nodes.length);
+      this.ask(subject, node);
     });
   }
 

@@ -2,7 +2,7 @@ import type { ClaimSheet } from '@/lib/claims/claim';
 import type { Watch } from '@/lib/engine/contract/quantity';
 import { Workshop } from '@/lib/engine/contract/workshop';
 import type { Candidate, SearchOfClaim } from '@/lib/explain/candidate';
-import type { SiblingPoint } from '@/lib/explain/flips/flip-context';
+import type { SiblingClaim } from '@/lib/explain/flips/flip-context';
 import { judge } from '@/lib/explain/search/judge';
 import { searchSentence } from '@/lib/explain/words/search-sentence';
 import type { Inputs } from '../read-inputs';
@@ -26,13 +26,11 @@ export interface Explaining {
   readonly cancelled: Watch['cancelled'];
 }
 
-/** Values of the same quantity in the sheet, which a wrong scaling may have started from. */
-const siblingsOf = (weighed: readonly Weighed[], quantity: string): SiblingPoint[] =>
-  weighed.filter(({ claim }) => claim.quantity.id === quantity).flatMap(({ claim, measurement }) => {
-    const value = measurement.points[0]?.value ?? null;
-    const field = claim.settings.fieldGauss ?? null;
-    return value === null ? [] : [{ claimId: claim.id, value, fieldGauss: field, totalMassMsun: claim.settings.totalMassMsun ?? null }];
-  });
+/** Claims of the same quantity that have a number, from which a wrong scaling may have started. */
+const siblingsOf = (weighed: readonly Weighed[], quantity: string): SiblingClaim[] =>
+  weighed
+    .filter(({ claim, measurement }) => claim.quantity.id === quantity && typeof measurement.points[0]?.value === 'number')
+    .map(({ claim }) => ({ claimId: claim.id, fieldGauss: claim.settings.fieldGauss ?? null }));
 
 /** The same sheet over the same bytes draws the same decoys. */
 const seedOf = (sheet: ClaimSheet, inputs: Inputs): string => [...inputs.files.files().map(({ sha256 }) => sha256), ...sheet.claims.map(({ id, claimed }) => `${id}=${claimed.map(({ printed }) => printed).join()}`)].join('|');

@@ -9,7 +9,7 @@ import type { Waveform } from '@/lib/engine/contract/waveform';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { houseCosmology, redshiftAt, type Cosmology } from '@/lib/engine/units/cosmology';
 import type { Flip } from '@/lib/explain/flip';
-import type { FlipContext, NoiseFacts, Shown, SiblingPoint, Written } from '@/lib/explain/flips/flip-context';
+import type { FlipContext, NoiseFacts, Shown, SiblingClaim, Written } from '@/lib/explain/flips/flip-context';
 import { flipsOf } from '@/lib/explain/flips/flips-of';
 import type { JudgedClaim, JudgedPoint } from '@/lib/explain/search/node';
 import type { Inputs } from '../read-inputs';
@@ -35,7 +35,7 @@ export interface Subject {
 const nearOne = new Set(['match', 'overlap', 'fitting-factor', 'mode-content', 'degeneracy']);
 
 /** Null where there is nothing to explain it with: an inequality, or no number. */
-export function subjectOf(weighed: Weighed, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingPoint[]): Subject | null {
+export function subjectOf(weighed: Weighed, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingClaim[]): Subject | null {
   const { claim, result } = weighed;
   const points = judgedPoints(weighed);
   if (points === null) return null;
@@ -66,7 +66,7 @@ function judgedPoints({ claim, result }: Weighed): { readonly index: number; rea
   return points.length === chosen.length && points.length > 0 ? points : null;
 }
 
-function contextOf({ claim, inputs: resolved, measurement }: Weighed, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingPoint[]): FlipContext {
+function contextOf({ claim, inputs: resolved, measurement }: Weighed, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingClaim[]): FlipContext {
   const used = new Map(measurement.settings.map((setting) => [setting.name, setting]));
   const cosmology = (used.get('cosmology')?.value as Cosmology | undefined) ?? claim.settings.cosmology ?? houseCosmology;
   const waveforms = Object.values(resolved.of).flat().filter((waveform): waveform is Waveform => waveform !== undefined);
@@ -96,9 +96,9 @@ const shownBy = (waveform: Waveform): Shown[] =>
 function noiseFacts(claim: Claim, { noise: curve }: QuantityInputs, sheet: ClaimSheet): NoiseFacts | null {
   const declared = claim.noise === null ? undefined : sheet.noise.get(claim.noise);
   if (curve === null || declared === undefined) return null;
-  if (declared.kind === 'built-in') return { curve, column: null, sided: 'one' };
+  if (declared.kind === 'built-in') return { curve, column: null };
   const column = declared.columns.find(({ role }) => role.kind === 'noise')?.role;
-  return { curve, column: column?.kind === 'noise' ? column.meaning : 'asd', sided: declared.sided };
+  return { curve, column: column?.kind === 'noise' ? column.meaning : 'asd' };
 }
 
 /** What the author wrote, beside the numbers: the statement and the heads of the claim's own files. */

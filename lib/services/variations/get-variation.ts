@@ -12,8 +12,8 @@ import { may } from '@/lib/policy/grant';
 import { readSubmission } from '@/lib/services/act';
 import { NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
-import { changesOf } from './changes';
-import { isOfDraft, isOwn, seesVariation, visibilityOf } from './sees-variation';
+import { isOfDraft, isOwn, seesVariation } from './sees-variation';
+import { viewHead } from './view-head';
 import type { VariationPage, VariedRun } from './variation-view';
 
 /** A link to exactly one view holds no more than its id. */
@@ -32,13 +32,7 @@ export function getVariationOf(actor: Actor, submissionId: string, variationId: 
     if (!run || !base || !official) return { ok: false, error: NOT_FOUND };
     const yours = isOwn(actor, row);
     return ok({
-      id: row.id,
-      claimId: row.claimId,
-      changes: changesOf(row.changes),
-      note: row.note,
-      revision: row.revision,
-      ofDraft: isOfDraft(row),
-      visibility: visibilityOf(row),
+      ...viewHead(row),
       submissionId,
       title: (await findRevision(reader, submissionId, row.revision))?.title ?? '',
       yours,

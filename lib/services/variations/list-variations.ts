@@ -5,9 +5,8 @@ import { userIdOf, type Actor } from '@/lib/policy/actor';
 import { readSubmission } from '@/lib/services/act';
 import type { Outcome } from '@/lib/services/app-error';
 import { viewRun } from '@/lib/services/runs/run-view';
-import { changesOf } from './changes';
 import { dailyQuota } from './request-variation';
-import { isOfDraft, visibilityOf } from './sees-variation';
+import { viewHead } from './view-head';
 import { pageOf, type Page, type PageAsk } from '@/lib/services/paging';
 import type { VariationList, VariationView } from './variation-view';
 
@@ -34,13 +33,7 @@ export function pageVariations(actor: Actor, submissionId: string, ask: PageAsk)
 }
 
 const viewVariation = (row: VariationRow, run: RunRow): VariationView => ({
-  id: row.id,
-  claimId: row.claimId,
-  changes: changesOf(row.changes),
-  note: row.note,
-  revision: row.revision,
-  ofDraft: isOfDraft(row),
-  visibility: visibilityOf(row),
+  ...viewHead(row),
   requestedAt: row.requestedAt.toISOString(),
   run: viewRun(run),
 });

@@ -9,7 +9,7 @@ export type { VariationChanges };
 export const VARIATION_VISIBILITIES = ['private', 'comment', 'link'] as const;
 export type VariationVisibility = (typeof VARIATION_VISIBILITIES)[number];
 
-interface VariationHead {
+export interface VariationHead {
   readonly id: string;
   readonly claimId: string;
   readonly changes: VariationChanges;
