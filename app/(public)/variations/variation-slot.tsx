@@ -19,5 +19,7 @@ export const variationSlot = ({ revision, result, variations, asked }: SlotProps
     const claim = result?.claims.find((c) => c.id === claimId);
     const source = claim && variations ? variationSource(revision, claim) : undefined;
     if (!source || !variations) return null;
-    return <VariationPanel source={source} own={variations.variations.filter((v) => v.claimId === claimId)} left={variations.left} asked={asked?.claimId === claimId ? asked : null} />;
+    const filled = asked?.claimId === claimId ? asked : null;
+    // A link on the page itself asks for another filling: the form begins anew with it.
+    return <VariationPanel key={JSON.stringify(filled?.changes ?? null)} source={source} own={variations.variations.filter((v) => v.claimId === claimId)} left={variations.left} asked={filled} />;
   };
