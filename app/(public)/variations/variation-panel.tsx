@@ -34,7 +34,7 @@ export function VariationPanel({ source, own, left, asked }: PanelProps) {
   const now = useProgress(source.submissionId, own.some(isLive), look);
   return (
     <Disclosure summary="Vary a setting" open={own.length > 0 || asked !== null}>
-      <div className="grid gap-4 rounded border border-dashed border-control px-4 py-3">
+      <div className="grid grid-cols-1 gap-4 rounded border border-dashed border-control px-4 py-3">
         <p className="text-ui text-ink-2">A variation of {source.claimId} is seen by you alone until you attach it to a comment or, on a record, open it by its link. The official number never changes. {left} left today.</p>
         {left > 0 ? <VariationForm source={source} asked={asked} /> : <p className="text-ui">Those of today are used up. More can be asked for tomorrow.</p>}
         {own.length > 0 && <Saved source={source} own={own} now={now} />}

@@ -90,8 +90,8 @@ export default async function OneVariation({ params }: PageProps) {
   return (
     <div className="wrap pb-16">
       <Head variation={variation} />
-      <div className="grid gap-10 mid:grid-cols-[minmax(0,1fr)_340px]">
-        <div className="grid min-w-0 content-start gap-8">
+      <div className="grid grid-cols-1 gap-10 mid:grid-cols-[minmax(0,1fr)_340px]">
+        <div className="grid min-w-0 grid-cols-1 content-start gap-8">
           {run.state !== 'measured' && <RunStanding submissionId={variation.submissionId} runId={variation.runId} run={run} follow={variation.yours} />}
           <section aria-labelledby="numbers-h"><h2 id="numbers-h" className="mb-2 text-h3">The number</h2>
             <ComparedTable claimId={claimId} points={comparePoints(official, varied, changes, scale)} unit={official.unit} scale={scale} officialWord={word} waiting={varied ? null : run.state === 'queued' || run.state === 'running' ? 'to come' : 'none'} />

@@ -19,7 +19,7 @@ export function CandidatesPart({ claim, slots }: CandidatesPartProps): ReactNode
   if (search === undefined) return null;
   const shown = claim.candidates.filter(({ standing }) => standing === 'candidate');
   return (
-    <div className="grid gap-3">
+    <div className="grid grid-cols-1 gap-3">
       {shown.map((candidate, i) => <CandidateCard key={candidate.id} claim={claim} candidate={candidate} place={`Candidate ${i + 1} of ${shown.length}`} below={slots.candidate?.(claim.id, candidate)} />)}
       <p className="text-ui">{search.sentence}</p>
       <CoincidenceTable claim={claim} />
