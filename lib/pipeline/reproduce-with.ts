@@ -5,11 +5,14 @@ import type { Figure, Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled } from '@/lib/engine/contract/quantity';
 import { ENGINE_VERSION } from '@/lib/engine/version';
 import type { ReadHdf5 } from '@/lib/formats/hdf5/hdf5-ask';
+import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
 import type { OpenFile } from '@/lib/formats/open-file';
 import type { Problem } from '@/lib/kernel/problem';
 import { err, ok, type Result } from '@/lib/kernel/result';
 import { HashedFiles, type StreamingDigest } from './hashed-files';
-import { explainSheet, type Explained } from './explain/explain-sheet';
+import { explainSheet, type Explained, type SearchEnd } from './explain/explain-sheet';
+import { measureOtherwise } from './explain/measure-otherwise';
+import { offeredReadings, type ReadingsByClaim } from './explain/offered-readings';
 import type { Weighed } from './explain/subject';
 import { measureClaim, resolveInputs } from './measure-claim';
 import { readInputs, type Inputs } from './read-inputs';
@@ -32,8 +35,10 @@ export interface ReproduceOptions {
   readonly withFigures: boolean;
   readonly onProgress: (fraction: number, doing: string) => void;
   readonly cancelled: () => boolean;
-  /** Look for readings under which claims that do not agree would; `outOfTime` is a net under the counted budget. */
-  readonly explain?: { readonly outOfTime: () => boolean };
+  /** Look for readings under which claims that do not agree would. */
+  readonly explain?: SearchEnd;
+  /** Each claim of the sheet read otherwise: of variations alone. */
+  readonly otherwise?: ReadOtherwise;
   /** A fresh SHA-256. */
   readonly digest: () => StreamingDigest;
 }
@@ -41,6 +46,8 @@ export interface ReproduceOptions {
 export interface Reproduced {
   readonly result: ResultDocument;
   readonly figures: FiguresByClaim;
+  /** How each claim could be read otherwise: for people, beside figures. */
+  readonly readings: ReadingsByClaim;
 }
 
 /** Share of the progress bar that reading files takes. */
@@ -54,7 +61,7 @@ export async function reproduceWith(catalogue: Catalogue, source: Source, option
   try {
     const files = new HashedFiles(source.openFile, options.digest);
     const inputs = await readInputs(sheet.value, files, fileProgress(sheet.value, options), source.readHdf5);
-    return inputs.ok ? ok(measureAll(sheet.value, inputs.value, options)) : inputs;
+    return inputs.ok ? measureAll(sheet.value, inputs.value, options) : inputs;
   } catch (thrown) {
     if (thrown instanceof Cancelled) return err([{ code: 'pipeline/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' }]);
     throw thrown;
@@ -70,30 +77,47 @@ function fileProgress(sheet: ClaimSheet, options: ReproduceOptions): (doing: str
   };
 }
 
-function measureAll(sheet: ClaimSheet, inputs: Inputs, options: ReproduceOptions): Reproduced {
-  const figures: Record<string, readonly Figure[]> = {};
-  const forClaims = options.explain === undefined ? 1 - readingShare : measuringShare;
-  const share = forClaims / sheet.claims.length;
-  const weighed = sheet.claims.map((claim, i): { claim: Claim; measurement: Measurement; result: ResultClaim } => {
-    if (options.cancelled()) throw new Cancelled();
-    const base = readingShare + i * share;
-    const onProgress = (fraction: number, doing: string) => options.onProgress(base + share * Math.min(1, Math.max(0, fraction)), `${claim.id}: ${doing}`);
-    onProgress(0, claim.quantity.title);
-    const measurement = measureClaim(claim, sheet, inputs, { withFigures: options.withFigures }, { onProgress, cancelled: options.cancelled });
-    if (options.withFigures) figures[claim.id] = measurement.figures;
-    return { claim, measurement, result: weighClaim(claim, measurement) };
-  });
-  const explained = options.explain === undefined ? new Map<string, Explained>() : explainAll(sheet, inputs, weighed, { ...options, ...options.explain });
-  const claims = weighed.map(({ result }): ResultClaim => ({ ...result, ...explained.get(result.id) }));
-  options.onProgress(1, 'done');
-  return { result: { format: 'counterfoil-result/1', engine: ENGINE_VERSION, title: sheet.title, files: inputs.files.files(), claims }, figures };
-}
+type Measured = Omit<Weighed, 'inputs'>;
 
-function explainAll(sheet: ClaimSheet, inputs: Inputs, measured: readonly Omit<Weighed, 'inputs'>[], { outOfTime, onProgress, cancelled }: ReproduceOptions & { readonly outOfTime: () => boolean }): ReadonlyMap<string, Explained> {
+function measureAll(sheet: ClaimSheet, inputs: Inputs, options: ReproduceOptions): Result<Reproduced, Problem[]> {
+  const measured: Measured[] = [];
+  for (const [i, claim] of sheet.claims.entries()) {
+    const one = measureOne(claim, { sheet, inputs, share: i / sheet.claims.length }, options);
+    if (!one.ok) return one;
+    measured.push({ claim, measurement: one.value, result: weighClaim(claim, one.value) });
+  }
   const weighed = measured.flatMap((one): Weighed[] => {
     const resolved = resolveInputs(one.claim, sheet, inputs);
     return resolved === null ? [] : [{ ...one, inputs: resolved }];
   });
+  const explained = options.explain === undefined ? new Map<string, Explained>() : explainAll(sheet, inputs, weighed, { ...options, ...options.explain });
+  const claims = measured.map(({ result }): ResultClaim => ({ ...result, ...explained.get(result.id) }));
+  options.onProgress(1, 'done');
+  return ok({
+    result: { format: 'counterfoil-result/1', engine: ENGINE_VERSION, title: sheet.title, files: inputs.files.files(), claims },
+    figures: options.withFigures ? Object.fromEntries(measured.map(({ claim, measurement }): [string, readonly Figure[]] => [claim.id, measurement.figures])) : {},
+    readings: options.withFigures && options.otherwise === undefined ? offeredReadings(sheet, inputs, weighed) : {},
+  });
+}
+
+interface Turn {
+  readonly sheet: ClaimSheet;
+  readonly inputs: Inputs;
+  /** How much of the claims came before. */
+  readonly share: number;
+}
+
+function measureOne(claim: Claim, { sheet, inputs, share }: Turn, options: ReproduceOptions): Result<Measurement, Problem[]> {
+  if (options.cancelled()) throw new Cancelled();
+  const forClaims = options.explain === undefined ? 1 - readingShare : measuringShare;
+  const onProgress = (fraction: number, doing: string) =>
+    options.onProgress(readingShare + forClaims * (share + Math.min(1, Math.max(0, fraction)) / sheet.claims.length), `${claim.id}: ${doing}`);
+  onProgress(0, claim.quantity.title);
+  const [extent, watch] = [{ withFigures: options.withFigures }, { onProgress, cancelled: options.cancelled }];
+  return options.otherwise === undefined ? ok(measureClaim(claim, sheet, inputs, extent, watch)) : measureOtherwise(claim, sheet, inputs, options.otherwise, extent, watch);
+}
+
+function explainAll(sheet: ClaimSheet, inputs: Inputs, weighed: readonly Weighed[], { endedBy, onProgress, cancelled }: ReproduceOptions & SearchEnd): ReadonlyMap<string, Explained> {
   const from = readingShare + measuringShare;
-  return explainSheet(sheet, inputs, weighed, { outOfTime, cancelled, onProgress: (fraction, doing) => onProgress(from + (1 - from) * fraction, doing) });
+  return explainSheet(sheet, inputs, weighed, { endedBy, cancelled, onProgress: (fraction, doing) => onProgress(from + (1 - from) * fraction, doing) });
 }

@@ -46,6 +46,9 @@ export const SUBMISSION_ACTIONS = {
     referee: [...underReview, ...published], editor: [...underReview, 'back-with-author', ...published], member: published,
   },
 
+  /** One's own check or variation under way; the service sees to it that it is. Never an official run. */
+  'submission.stop-run': { author: everywhere, 'co-author': everywhere, referee: seenByReferee, editor: seenByEditor, member: published },
+
   /** One's own reruns, wherever one may still see the submission. */
   'submission.view-variations': { author: everywhere, 'co-author': everywhere, referee: seenByReferee, editor: seenByEditor, member: published },
   /** One rerun: one's own, one attached to a comment that one may read, or one that its owner opened by its link. */

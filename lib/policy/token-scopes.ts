@@ -6,7 +6,7 @@ export type TokenScope = (typeof TOKEN_SCOPES)[number];
 
 export const SCOPE_MEANINGS: Readonly<Record<TokenScope, string>> = {
   read: 'see your submissions, runs, variations and threads',
-  draft: 'make and edit drafts, check them, ask for variations',
+  draft: 'make and edit drafts, check them, ask for variations, stop either',
   lodge: 'lodge a draft and withdraw a submission',
   review: 'open, answer and close threads, and hand in a report',
 };
@@ -34,6 +34,7 @@ const SCOPES: Readonly<Partial<Record<SubmissionAction | AccountAction, readonly
   'submission.answer-candidate': ['draft'],
   'submission.revise': ['draft'],
   'submission.vary': ['draft', 'review'],
+  'submission.stop-run': ['draft', 'review'],
   'submission.share-variation': ['draft', 'review'],
   'submission.lodge': ['lodge'],
   'submission.withdraw': ['lodge'],

@@ -2,7 +2,7 @@
 const SEARCH_LIMIT_MS = 120_000;
 
 /** Begins to count when it is first asked. */
-export function searchLimit(limitMs = SEARCH_LIMIT_MS): { readonly outOfTime: () => boolean } {
+export function searchLimit(limitMs = SEARCH_LIMIT_MS): { readonly endedBy: () => string | null } {
   let began: number | null = null;
-  return { outOfTime: () => performance.now() - (began ??= performance.now()) > limitMs };
+  return { endedBy: () => (performance.now() - (began ??= performance.now()) > limitMs ? 'the time for the search was over' : null) };
 }

@@ -79,7 +79,7 @@ describe('the search', () => {
   }, LONG);
 
   it('ends where its clock asks for it, says so, and keeps what was tried', async () => {
-    const { search } = claimOf(await explained('loudness', { outOfTime: () => true }), 'C1');
+    const { search } = claimOf(await explained('loudness', { endedBy: () => 'the time for the search was over' }), 'C1');
     expect(search?.stoppedBecause).toContain('time');
     expect(search?.tried).toBeGreaterThan(5);
     expect(search?.left).toBeGreaterThan(0);

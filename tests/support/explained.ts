@@ -9,16 +9,16 @@ const folderOf = (specimen: string): string => path.join(process.cwd(), 'content
 interface Changes {
   /** Puts something else into the sheet before it is read. */
   readonly sheet?: (sheet: Record<string, unknown>) => unknown;
-  readonly outOfTime?: () => boolean;
+  readonly endedBy?: () => string | null;
   readonly cancelled?: () => boolean;
 }
 
 /** A specimen through the whole pipeline, with the search. */
-export async function explained(specimen: string, { sheet = (given) => given, outOfTime = () => false, cancelled = () => false }: Changes = {}): Promise<ResultDocument> {
+export async function explained(specimen: string, { sheet = (given) => given, endedBy = () => null, cancelled = () => false }: Changes = {}): Promise<ResultDocument> {
   const given = JSON.parse(readFileSync(path.join(folderOf(specimen), 'claim.json'), 'utf8')) as Record<string, unknown>;
   const done = await reproduce(
     { sheetJson: sheet(given), openFile: (name) => createReadStream(path.join(folderOf(specimen), name)) },
-    { withFigures: false, onProgress: () => undefined, cancelled, explain: { outOfTime }, digest: () => { const hash = createHash('sha256'); return { update: (bytes) => void hash.update(bytes), hex: () => hash.digest('hex') }; } },
+    { withFigures: false, onProgress: () => undefined, cancelled, explain: { endedBy }, digest: () => { const hash = createHash('sha256'); return { update: (bytes) => void hash.update(bytes), hex: () => hash.digest('hex') }; } },
   );
   if (!done.ok) throw new Error(JSON.stringify(done.error));
   return done.value.result;

@@ -69,7 +69,7 @@ export const computeHere: ComputeSheet = (job, watch) => compute({ ...job, expla
 const compute: ComputeSheet = async ({ sheet, files, withFigures, explain }, { onProgress, signal }) => {
   const pathOf = new Map(files.map((f) => [f.name, f.path]));
   const openFile = (name: string) => createReadStream(pathOf.get(name) ?? '/nowhere') as AsyncIterable<Uint8Array>;
-  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256, ...(explain && { explain: { outOfTime: () => false } }) });
+  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256, ...(explain && { explain: { endedBy: () => null } }) });
   return done.ok ? ok(done.value) : done;
 };
 

@@ -2,6 +2,7 @@
 import { useRouter } from 'next/navigation';
 import { useCallback } from 'react';
 import { useProgress } from '@/app/(desk)/compose/[id]/use-progress';
+import { StopRun } from '@/app/(desk)/runs/stop-run';
 import { Button } from '@/app/_ui/primitives/button';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { OfflineStrap } from '@/app/_ui/primitives/offline-strap';
@@ -32,6 +33,7 @@ export function RunStanding({ submissionId, runId, run, follow }: StandingProps)
       <OfflineStrap>The rerun goes on without you; its number is here when the connection is back.</OfflineStrap>
       <p className="text-ui" role="status">{words}. The varied number takes its place when the run has ended; this page can be left meanwhile.</p>
       <ProgressBar label="The variation" fraction={told.fraction} />
+      {follow && <StopRun id={submissionId} runId={runId} what="variation" />}
       {!follow && <div><Button size="low" onClick={look}>Look again</Button></div>}
     </div>
   );

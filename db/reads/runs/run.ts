@@ -1,6 +1,7 @@
 import { and, desc, eq, inArray } from 'drizzle-orm';
 import type { Reader } from '@/db/client';
 import { runProgress, runResults, runs, type RunKind } from '@/db/schema/runs';
+import type { ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
 import { revisions } from '@/db/schema/submissions';
 
 /** All of a run but its figures, which are large and asked for by themselves. */
@@ -54,10 +55,16 @@ export async function findFigures(reader: Reader, runId: string) {
   return row?.figures ?? undefined;
 }
 
+/** How the claims of a run could be read otherwise; none where an earlier version computed it. */
+export async function findReadings(reader: Reader, runId: string): Promise<ReadingsByClaim> {
+  const [row] = await reader.select({ readings: runResults.readings }).from(runResults).where(eq(runResults.runId, runId));
+  return row?.readings ?? {};
+}
+
 /** What the worker computes from. */
 export async function findRunInputs(reader: Reader, runId: string) {
   const [row] = await reader
-    .select({ id: runs.id, submissionId: runs.submissionId, revisionNumber: revisions.number, kind: runs.kind, sheet: runs.sheet, inputs: runs.inputs, done: runResults.runId })
+    .select({ id: runs.id, submissionId: runs.submissionId, revisionNumber: revisions.number, kind: runs.kind, sheet: runs.sheet, otherwise: runs.otherwise, inputs: runs.inputs, done: runResults.runId })
     .from(runs)
     .innerJoin(revisions, eq(revisions.id, runs.revisionId))
     .leftJoin(runResults, eq(runResults.runId, runs.id))

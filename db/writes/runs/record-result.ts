@@ -1,10 +1,11 @@
 import type { Transaction } from '@/db/client';
 import { runResults, type RunStep } from '@/db/schema/runs';
 import type { Problem } from '@/lib/kernel/problem';
+import type { ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 
 export type RunFinding = { readonly log: readonly RunStep[] } & (
-  | { readonly outcome: 'measured'; readonly engine: string; readonly result: ResultDocument; readonly figures: FiguresByClaim; readonly resultDigest: string }
+  | { readonly outcome: 'measured'; readonly engine: string; readonly result: ResultDocument; readonly figures: FiguresByClaim; readonly readings: ReadingsByClaim; readonly resultDigest: string }
   | { readonly outcome: 'refused'; readonly engine: string; readonly problems: readonly Problem[] }
 );
 

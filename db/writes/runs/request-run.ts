@@ -1,6 +1,7 @@
 import { and, eq } from 'drizzle-orm';
 import type { Transaction } from '@/db/client';
 import { runProgress, runs, type RunInput, type RunKind } from '@/db/schema/runs';
+import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
 import type { SubmissionGrant } from '@/lib/policy/grant';
 
 export interface RunRequest {
@@ -10,6 +11,8 @@ export interface RunRequest {
   readonly sheet: unknown;
   readonly inputs: readonly RunInput[];
   readonly inputsDigest: string;
+  /** Of variations alone; the database refuses it of others. */
+  readonly otherwise?: ReadOtherwise;
 }
 
 type MayRun = SubmissionGrant<'submission.check'> | SubmissionGrant<'submission.lodge'> | SubmissionGrant<'submission.vary'> | SubmissionGrant<'record.recheck'>;

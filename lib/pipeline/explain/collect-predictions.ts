@@ -19,8 +19,8 @@ export interface Collected {
 }
 
 export interface Collecting extends Asking {
-  /** True when the clock asks for an end: a net under the counted budget. */
-  readonly outOfTime: () => boolean;
+  /** Why the search is to end where it stands; null while it may go on. */
+  readonly endedBy: () => string | null;
   readonly onProgress: (fraction: number, doing: string) => void;
 }
 
@@ -52,6 +52,8 @@ export class PredictionCollector {
   ) {}
 
   collect(): Collected {
+    // Asked before any progress is told: from here on an end keeps what there is.
+    this.stopped = this.how.endedBy();
     const wanting = this.subjects.filter(({ judged }) => judged.wanting);
     wanting.forEach((subject, k) => {
       this.singles(subject, (share) => this.how.onProgress((0.7 * (k + share)) / wanting.length, `${subject.judged.id}: other readings`));
@@ -108,7 +110,7 @@ export class PredictionCollector {
 
   private mayRerun({ asked, judged }: Subject, changes: readonly Rerun[], always: boolean): boolean {
     if (this.how.watch.cancelled()) throw new Cancelled();
-    if (this.stopped === null && this.how.outOfTime()) this.stopped = 'the time for the search was over';
+    this.stopped ??= this.how.endedBy();
     if (this.stopped !== null) return false;
     const cost = costUnder(asked, changes);
     const spent = this.spent.get(judged.id) ?? 0;

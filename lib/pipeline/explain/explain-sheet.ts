@@ -19,9 +19,13 @@ export interface Explained {
   readonly search: SearchOfClaim;
 }
 
-export interface Explaining {
-  /** A net under the counted budget: true ends the search where it stands. */
-  readonly outOfTime: () => boolean;
+/** Ends a search from outside with what it has: the clock, as a net under the counted budget, or whoever asked for the run. */
+export interface SearchEnd {
+  /** The reason, to be printed after "The search ended early:"; null while the search may go on. */
+  readonly endedBy: () => string | null;
+}
+
+export interface Explaining extends SearchEnd {
   readonly onProgress: Watch['onProgress'];
   readonly cancelled: Watch['cancelled'];
 }
@@ -54,7 +58,7 @@ export function explainSheet(sheet: ClaimSheet, inputs: Inputs, weighed: readonl
     const found = verdicts.get(subject.judged.id);
     if (found === undefined) continue;
     how.onProgress(0.9, `${subject.judged.id}: the number that would tell them apart`);
-    const extraNumber = how.outOfTime() ? null : extraNumberOf(subject, found.candidates, tried, asking);
+    const extraNumber = how.endedBy() !== null ? null : extraNumberOf(subject, found.candidates, tried, asking);
     const reach = { ...found.search, left: left.get(subject.judged.id) ?? 0, stoppedBecause };
     explained.set(subject.judged.id, {
       candidates: found.candidates.map((candidate) => ({ ...candidate, values: atAllPoints(candidate.values, subject) })),

@@ -44,6 +44,18 @@ export async function giveUpRun(tx: Transaction, run: Run, attempts: number): Pr
   await recordAudit(tx, { actor: WORKER, action: 'run.give-up', subjectKind: 'submission', subjectId: run.submissionId, details: { runId: run.id, attempts } });
 }
 
+/** Whoever asked for it wants it no longer, and no number was there yet. An official run is never asked to stop. */
+export async function endStoppedRun(db: Database, run: Run): Promise<void> {
+  const because = 'Stopped by the one who asked for it, before there was a number. Nothing was kept of it; ask again when you like.';
+  await db.transaction(async (tx) => {
+    const facts = await findSubmissionFacts(tx, WORKER, run.submissionId, true);
+    if (!facts) throw new Error(`run ${run.id} belongs to no submission`);
+    await endProgress(tx, { runId: run.id, submissionId: run.submissionId }, { state: 'stopped', because });
+    await moveOn(tx, run, facts, backTo(run));
+    await recordAudit(tx, { actor: WORKER, action: 'run.end-stopped', subjectKind: 'submission', subjectId: run.submissionId, details: { runId: run.id } });
+  });
+}
+
 const backTo = (run: Run): 'draft' | 'back-with-author' => (run.revisionNumber > 1 ? 'back-with-author' : 'draft');
 
 /** Only from the state in which the machine may: a submission withdrawn meanwhile stays withdrawn. */

@@ -19,6 +19,6 @@ export const runSchema = z
 
 const axis = z.object({ label: z.string(), unit: z.string(), scale: z.enum(['linear', 'log']), values: z.array(z.number()) });
 const series = z.object({ label: z.string(), unit: z.string(), role: z.string(), axis: z.enum(['left', 'right']), scale: z.enum(['linear', 'log']), values: z.array(z.number().nullable()) });
-const figure = z.looseObject({ kind: z.string(), title: z.string(), at: z.record(z.string(), z.number()).optional(), x: axis, series: z.array(series) });
+const figure = z.looseObject({ kind: z.string(), title: z.string(), at: z.record(z.string(), z.union([z.number(), z.string()])).optional(), x: axis, series: z.array(series) });
 
 export const figuresSchema = z.object({ runId: z.string(), figures: z.record(z.string(), z.array(figure)) }).meta({ id: 'Figures' });

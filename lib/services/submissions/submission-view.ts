@@ -45,7 +45,7 @@ export type RunView = {
   readonly requestedAt: string;
 } & (
   | { readonly state: 'queued' | 'running'; readonly fraction: number; readonly doing: string }
-  /** Given up after three tries; the sentence says what a person can do. */
+  /** Given up after three tries, or stopped by the one who asked; the sentence says what a person can do. */
   | { readonly state: 'stopped'; readonly because: string }
   /** The sheet or a file could not be read; every problem is listed. */
   | { readonly state: 'refused'; readonly finishedAt: string; readonly problems: readonly Problem[] }

@@ -9,7 +9,7 @@ import { Piscina } from 'piscina';
 import type { Problem } from '@/lib/kernel/problem';
 import { err } from '@/lib/kernel/result';
 import type { ComputeSheet, SheetJob, SheetWatch } from '../compute';
-import type { ProgressNote, SheetTask } from './sheet-task';
+import { askToEnd, newWishes, searchHasBegun, type ProgressNote, type SheetTask, type StopWishes } from './sheet-task';
 
 export interface ThreadLimits {
   readonly threads: number;
@@ -43,16 +43,33 @@ export function openSheetThreads(limits: ThreadLimits = houseLimits): SheetThrea
     const { port1, port2 } = new MessageChannel();
     port1.on('message', ({ fraction, doing }: ProgressNote) => watch.onProgress(fraction, doing));
     const limit = AbortSignal.timeout(limits.timeLimitMs);
-    const task: SheetTask = { ...job, port: port2 };
+    const wishes = newWishes();
+    const byHand = endingByHand(watch.stop, wishes);
+    const task: SheetTask = { ...job, port: port2, wishes };
     try {
-      return await pool.run(task, { transferList: [port2], signal: AbortSignal.any([watch.signal, limit]) });
+      return await pool.run(task, { transferList: [port2], signal: AbortSignal.any([watch.signal, limit, byHand]) });
     } catch (thrown) {
-      return err([problemOf(thrown, watch, limit, limits)]);
+      return err([byHand.aborted ? STOPPED : problemOf(thrown, watch, limit, limits)]);
     } finally {
       port1.close();
     }
   };
   return { run, close: () => pool.destroy() };
+}
+
+/** The run was wanted no longer; nothing of it is kept. */
+export const STOPPED: Problem = { code: 'worker/stopped', where: '', saw: 'a request to stop from whoever asked for the run', expected: 'the run to be let finish', hint: 'Ask for it again when you like.' };
+
+/** Aborts at once while numbers are still to come; in the search it only leaves word. */
+function endingByHand(stop: AbortSignal | undefined, wishes: StopWishes): AbortSignal {
+  const end = new AbortController();
+  const asked = (): void => {
+    askToEnd(wishes);
+    if (!searchHasBegun(wishes)) end.abort();
+  };
+  if (stop?.aborted) asked();
+  else stop?.addEventListener('abort', asked, { once: true });
+  return end.signal;
 }
 
 function problemOf(thrown: unknown, watch: SheetWatch, limit: AbortSignal, limits: ThreadLimits): Problem {

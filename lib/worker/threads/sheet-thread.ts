@@ -4,19 +4,21 @@ import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
 import { reproduce } from '@/lib/pipeline/reproduce';
 import { readHdf5 } from '@/lib/threads/read-hdf5';
 import { searchLimit } from '@/lib/threads/search-limit';
-import type { ProgressNote, SheetTask } from './sheet-task';
+import { endedByHand, type ProgressNote, type SheetTask } from './sheet-task';
 
 /**
  * Runs inside a worker thread: one sheet through the whole pipeline. It is given paths, never an
- * environment, a database or a store. Cancelling ends the thread from outside: a loop over samples
- * cannot listen for messages.
+ * environment, a database or a store. Cancelling ends the thread from outside; a search is ended from
+ * within, so that the numbers found before it are kept.
  */
-export default async function sheetThread({ sheet, files, withFigures, explain, port }: SheetTask): ReturnType<typeof reproduce> {
+export default async function sheetThread({ sheet, files, withFigures, explain, otherwise, port, wishes }: SheetTask): ReturnType<typeof reproduce> {
+  const limit = searchLimit();
+  const end = { endedBy: () => endedByHand(wishes) ?? limit.endedBy() };
   const note = (fraction: number, doing: string): void => port.postMessage({ fraction, doing } satisfies ProgressNote);
   try {
     return await reproduce(
       { sheetJson: sheet, openFile: openAmong(files), readHdf5 },
-      { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256, ...(explain ? { explain: searchLimit() } : {}) },
+      { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256, ...(otherwise && { otherwise }), ...(explain ? { explain: end } : {}) },
     );
   } finally {
     port.close();

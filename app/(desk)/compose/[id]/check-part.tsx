@@ -7,6 +7,7 @@ import { ProgressList } from '@/app/_ui/primitives/progress';
 import { VerdictStrip } from '@/app/_ui/verdict/verdict-chip';
 import { countVerdicts } from '@/app/_ui/verdict/verdict-words';
 import { Trouble } from '../../act-parts';
+import { StopRun } from '../../runs/stop-run';
 import { useAct } from '../../use-act';
 import { check, lodge } from '../actions';
 import { AnswerForm } from './answer-form';
@@ -49,6 +50,7 @@ export function CheckPart(props: CheckPartProps) {
         <h2 id="check-h" className="text-h3">Check</h2>
         <CheckHead latest={latest} />
         {running && <ProgressList label="The check" steps={[{ label: progress?.doing || latest?.doing || 'Waiting for its turn', fraction: progress?.fraction ?? latest?.fraction ?? 0 }]} />}
+        {latest && running && <StopRun key={latest.runId} id={id} runId={latest.runId} what="check" />}
         <div><Button tone={latest?.current ? 'plain' : 'main'} busy={running ? 'Checking' : asked.busy ? 'Asking' : null} onClick={() => void runCheck()}>{latest ? 'Check again' : 'Check'}</Button></div>
         <Trouble trouble={asked.trouble} />
       </header>
@@ -63,7 +65,7 @@ export function CheckPart(props: CheckPartProps) {
 function CheckHead({ latest }: { readonly latest: CheckSummary | null }) {
   if (!latest) return <p className="text-ui text-ink-2">The server reads your files and computes each number, before anybody else sees them.</p>;
   if (isRunning(latest)) return <p className="text-ui text-ink-2" role="status">The check reads what was saved. Go on writing; it is saved when the check has ended.</p>;
-  if (latest.state === 'stopped') return <p className="text-ui text-differs" role="status">The check stopped: {latest.because}</p>;
+  if (latest.state === 'stopped') return <p className="text-ui text-differs" role="status">{latest.because}</p>;
   if (latest.state === 'refused') return <p className="text-ui" role="status">{latest.problems.length} to mend before anything can be computed.</p>;
   return (
     <div role="status" className="grid gap-1">

@@ -39,6 +39,26 @@ describe('a sheet in a thread', () => {
   });
 });
 
+describe('a sheet that is wanted no longer', () => {
+  it('ends at once while its numbers are still to come', async () => {
+    const stop = new AbortController();
+    const run = await threads.run({ ...job, explain: true }, { ...quiet, stop: stop.signal, onProgress: () => stop.abort() });
+    expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/stopped']);
+  });
+  it('keeps its numbers when only the search for other readings was under way', async () => {
+    const from = join(process.cwd(), 'content', 'specimens', 'loudness');
+    const loud = JSON.parse(readFileSync(join(from, 'claim.json'), 'utf8')) as { waveforms: Record<string, { file: string }> };
+    const files = Object.values(loud.waveforms).map(({ file }) => ({ name: file, path: join(from, file) }));
+    const stop = new AbortController();
+    const run = await threads.run({ sheet: loud, files, withFigures: false, explain: true }, { ...quiet, stop: stop.signal, onProgress: (_, doing) => doing.includes('other readings') && stop.abort() });
+    if (!run.ok) throw new Error(JSON.stringify(run.error));
+    const [claim] = run.value.result.claims;
+    expect(claim?.points[0]?.value).toBeGreaterThan(0);
+    expect(claim?.search?.sentence).toContain('The search ended early: it was stopped by the one who asked for the run.');
+    expect(claim?.search?.left).toBeGreaterThan(0);
+  });
+});
+
 describe('a thread with narrow limits', () => {
   it('ends a run that takes too long', async () => {
     const narrow = openSheetThreads({ ...houseLimits, timeLimitMs: 1 });

@@ -1,0 +1,81 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { database } from '@/db/client';
+import { err } from '@/lib/kernel/result';
+import type { SignedInActor } from '@/lib/policy/actor';
+import { stopRun } from '@/lib/services/runs/stop-run';
+import { checkDraft } from '@/lib/services/submissions/check-draft';
+import { getDraft } from '@/lib/services/submissions/get-draft';
+import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
+import { requestVariation } from '@/lib/services/variations/request-variation';
+import { createS3Store } from '@/lib/storage/s3-store';
+import type { ComputeSheet } from '@/lib/worker/compute';
+import { runSubmission } from '@/lib/worker/handlers/run-submission';
+import { STOPPED } from '@/lib/worker/threads/run-sheet';
+import { draftWithBursts, must, openServiceDesk, type ServiceDesk } from '../../support/service-desk';
+
+let desk: ServiceDesk;
+let author: SignedInActor;
+let referee: SignedInActor;
+let id: string;
+
+beforeAll(async () => {
+  desk = await openServiceDesk();
+  [author, referee] = [await desk.person('T. Marrable'), await desk.person('S. Vasterling')];
+  id = await draftWithBursts(author);
+});
+afterAll(() => desk.close());
+
+const run = (runId: string, compute: ComputeSheet) =>
+  runSubmission({ runId }, { database: desk.worker, store: createS3Store(desk.store.env), mail: { SMTP_URL: 'smtp://127.0.0.1:9', MAIL_FROM: 'x@y.example' }, compute, signal: new AbortController().signal }, 1);
+
+/** A computation that would never end by itself. */
+const endless: ComputeSheet = (_, { stop }) => new Promise((resolve) => stop?.addEventListener('abort', () => resolve(err([STOPPED]))));
+
+describe('a run that is wanted no longer', () => {
+  it('never begins when it was still waiting, and the draft is its author’s again', async () => {
+    const { runId } = must(await checkDraft(author, id));
+    must(await stopRun(author, id, runId));
+    must(await stopRun(author, id, runId));
+    await desk.runAll();
+    expect(must(await getDraft(author, id))).toMatchObject({ state: 'draft', check: { run: { id: runId, state: 'stopped' } } });
+    expect(await desk.sql('select 1 from run_results')).toEqual([]);
+    expect(await stopRun(author, id, runId)).toMatchObject({ ok: false, error: { code: 'conflict' } });
+  });
+
+  it('ends in the middle of its computation, and leaves no number', async () => {
+    const { runId } = must(await checkDraft(author, id));
+    const running = run(runId, endless);
+    must(await stopRun(author, id, runId));
+    await running;
+    const { state, check } = must(await getDraft(author, id));
+    expect({ state, run: check?.run.state, because: check?.run.state === 'stopped' && check.run.because }).toEqual({ state: 'draft', run: 'stopped', because: expect.stringContaining('Nothing was kept') });
+  });
+
+  it('is asked for again as if nothing had been', async () => {
+    const { runId } = must(await checkDraft(author, id));
+    await desk.runAll();
+    expect(must(await getDraft(author, id)).check?.run).toMatchObject({ id: runId, state: 'measured' });
+  });
+});
+
+describe('a run of others', () => {
+  it('is not stopped: a check is its authors’, a variation belongs to who asked, and an official run goes to its end', async () => {
+    const variation = must(await requestVariation(author, id, { claimId: 'C1', changes: { settings: { fLowHz: 30 } }, note: '' }));
+    expect(await stopRun(referee, id, variation.runId)).toMatchObject({ ok: false, error: { code: 'not-found' } });
+    must(await stopRun(author, id, variation.runId));
+    await desk.runAll();
+    const { runId } = must(await lodgeSubmission(author, id));
+    expect(await stopRun(author, id, runId)).toMatchObject({ ok: false, error: { code: 'precondition' } });
+    await desk.runAll();
+    await desk.sql(`insert into invitations (submission_id, referee_id, invited_by, slot, state, answered_at) values ($1, $2, $2, 'C', 'accepted', now())`, id, referee.userId);
+    await desk.sql(`update submissions set state = 'in-review', round = 1 where id = $1`, id);
+    const theirs = must(await requestVariation(referee, id, { claimId: 'C1', changes: { settings: { fLowHz: 30 } }, note: '' }));
+    expect(await stopRun(author, id, theirs.runId)).toMatchObject({ ok: false, error: { code: 'not-found' } });
+    must(await stopRun(referee, id, theirs.runId));
+  });
+
+  it('leaves a word that the database itself never changes', async () => {
+    await desk.sql('grant update, delete on run_stops to counterfoil_web');
+    for (const statement of ['update run_stops set asked_at = now()', 'delete from run_stops']) await expect(database().$client.query(statement), statement).rejects.toThrow('never changed or removed');
+  });
+});
