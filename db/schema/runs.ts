@@ -1,5 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { check, index, integer, json, pgTable, real, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core';
+import type { ReadOtherwise } from '../../lib/explain/read-otherwise';
+import type { ReadingsByClaim } from '../../lib/pipeline/explain/offered-readings';
 import type { FiguresByClaim, ResultDocument } from '../../lib/pipeline/result';
 import type { Problem } from '../../lib/kernel/problem';
 import { moment, oneOf, randomId } from './columns';
@@ -37,10 +39,14 @@ export const runs = pgTable(
     inputs: json('inputs').$type<readonly RunInput[]>().notNull(),
     /** SHA-256 of the canonical form of sheet, names and hashes: says whether a draft is still what was checked. */
     inputsDigest: text('inputs_digest').notNull(),
+    /** What a variation reads otherwise than its sheet and files say. */
+    otherwise: json('otherwise').$type<ReadOtherwise>(),
     requestedAt: moment('requested_at').notNull().defaultNow(),
   },
   (t) => [
     check('runs_kind_known', oneOf('kind', RUN_KINDS)),
+    // Nothing read otherwise can ever be official.
+    check('runs_otherwise_only_varied', sql`${t.otherwise} is null or ${t.kind} = 'variation'`),
     index('runs_revision_idx').on(t.revisionId, t.kind, t.requestedAt),
     // One official run for a revision and an engine: the second request finds the first.
     uniqueIndex('runs_official_once').on(t.revisionId, t.engine).where(sql`${t.kind} = 'official'`),
@@ -71,6 +77,8 @@ export const runResults = pgTable(
     engine: text('engine').notNull(),
     result: json('result').$type<ResultDocument>(),
     figures: json('figures').$type<FiguresByClaim>(),
+    /** How each claim could be read otherwise: what a variation may choose from. Beside the result, never part of it. */
+    readings: json('readings').$type<ReadingsByClaim>(),
     resultDigest: text('result_digest'),
     problems: json('problems').$type<readonly Problem[]>().notNull().default([]),
     /** What the run did and when: beside the result, never part of it. */

@@ -1,6 +1,7 @@
 import { sql } from 'drizzle-orm';
 import { boolean, index, json, pgTable, text, uuid } from 'drizzle-orm/pg-core';
 import { users } from './accounts';
+import type { Mask } from '../../lib/explain/read-otherwise';
 import { moment, randomId } from './columns';
 import { runs } from './runs';
 import { revisions, submissions } from './submissions';
@@ -11,6 +12,10 @@ export interface VariationChanges {
   readonly settings?: Readonly<Record<string, unknown>>;
   /** Id of a built-in curve, or the name of a noise entry of the sheet. */
   readonly noise?: { readonly curve: string } | { readonly named: string };
+  /** Conventions read otherwise, with the words that the base run had for them. */
+  readonly readings?: readonly { readonly id: string; readonly clause: string }[];
+  /** A stretch of the files' own time that is set to zero. */
+  readonly mask?: Mask;
 }
 
 /** As rows were written when four things could be changed. They stay as they are; `lib/services/variations/changes.ts` reads both. */

@@ -23,7 +23,9 @@ export type InputEdit =
   /** Modes of negative m left out. */
   | { readonly edit: 'drop-negative-m' }
   /** The series taken for another variable of the radiation. */
-  | { readonly edit: 'variable'; readonly variable: 'strain' | 'news' | 'psi4' };
+  | { readonly edit: 'variable'; readonly variable: 'strain' | 'news' | 'psi4' }
+  /** A stretch of the files' own time set to zero; nobody's reading, asked for by hand. */
+  | { readonly edit: 'mask'; readonly from: number; readonly to: number };
 
 /** How the number under the other reading comes to be. */
 export type FlipChange =

@@ -2,11 +2,13 @@ import { waveformNames, type Claim, type ClaimSheet } from '@/lib/claims/claim';
 import { inputRoles } from '@/lib/claims/claim-inputs';
 import { claimFindings } from '@/lib/claims/sheet-findings';
 import { completeMeasurement } from '@/lib/engine/budget/complete-measurement';
+import { sweepFigure } from '@/lib/engine/quantities/sweep-figure';
 import type { Finding } from '@/lib/engine/contract/finding';
 import type { Measurement } from '@/lib/engine/contract/measurement';
 import type { Waveform } from '@/lib/engine/contract/waveform';
-import { Cancelled, notComputable, type QuantityInputs, type Watch } from '@/lib/engine/contract/quantity';
+import { Cancelled, notComputable, type MeasureRequest, type QuantityInputs, type Watch } from '@/lib/engine/contract/quantity';
 import { duplicateFindings, type Inputs } from './read-inputs';
+import type { Place } from '@/lib/kernel/place';
 
 export interface Extent {
   readonly withFigures: boolean;
@@ -15,17 +17,25 @@ export interface Extent {
 }
 
 /** One claim through the workshop: stopped by what its inputs show, or measured. */
-export function measureClaim(claim: Claim, sheet: ClaimSheet, inputs: Inputs, extent: Extent, watch: Watch): Measurement {
+export const measureClaim = (claim: Claim, sheet: ClaimSheet, inputs: Inputs, extent: Extent, watch: Watch): Measurement =>
+  measureFrom(claim, { resolved: resolveInputs(claim, sheet, inputs), found: inputFindings(claim, sheet, inputs) }, extent, watch);
+
+/** What a claim is measured from, and what was found in it. */
+export interface Resolved {
+  readonly resolved: QuantityInputs | null;
+  readonly found: readonly Finding[];
+}
+
+/** The same from inputs that need not be those of the files. */
+export function measureFrom(claim: Claim, { resolved, found }: Resolved, extent: Extent, watch: Watch): Measurement {
   const points = (claim.over?.values ?? [null]).map((value) => (claim.over && value !== null ? { [claim.over.setting]: value } : {}));
-  const found = inputFindings(claim, sheet, inputs);
-  const resolved = resolveInputs(claim, sheet, inputs);
   const stopped = found.some((finding) => finding.level === 'stops-lodging');
-  if (stopped || resolved === null) return notComputable(found, points);
+  if (stopped || resolved === null) return notComputable([...found], points);
   const measurement = measureOrStop(claim, resolved, extent, watch, points);
   return { ...measurement, findings: distinct([...found, ...measurement.findings]) };
 }
 
-function inputFindings(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Finding[] {
+export function inputFindings(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Finding[] {
   const names = waveformNames(claim.of);
   const ofWaveforms = names.flatMap((name) => inputs.waveforms.get(name)?.findings ?? []);
   const ofNoise = claim.noise === null ? [] : (inputs.noise.get(claim.noise)?.findings ?? []);
@@ -51,12 +61,12 @@ function relativesOf(name: string, sheet: ClaimSheet): string[] {
 }
 
 /** A defect of one quantity must not take the other claims with it: it fails closed and says so. */
-function measureOrStop(claim: Claim, inputs: QuantityInputs, extent: Extent, watch: Watch, points: readonly Readonly<Record<string, number>>[]): Measurement {
+function measureOrStop(claim: Claim, inputs: QuantityInputs, extent: Extent, watch: Watch, points: readonly Place[]): Measurement {
   const claimed = claim.claimed.map((entry) => (entry.kind === 'value' ? entry.value : null));
   try {
-    const request = { claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent };
+    const request: MeasureRequest = { claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent };
     const measurement = claim.quantity.measure(request, watch);
-    if (measurement.points.length === points.length) return completeMeasurement(claim.quantity, request, measurement, watch);
+    if (measurement.points.length === points.length) return withSweep(completeMeasurement(claim.quantity, request, measurement, watch), claim, request);
     return notComputable([defect(claim, `it gave ${measurement.points.length} values for ${points.length} points`)], points);
   } catch (thrown) {
     if (thrown instanceof Cancelled) throw thrown;
@@ -64,10 +74,14 @@ function measureOrStop(claim: Claim, inputs: QuantityInputs, extent: Extent, wat
   }
 }
 
+/** All points at once, behind what shows the one furthest off. */
+const withSweep = (measurement: Measurement, { quantity }: Claim, request: MeasureRequest): Measurement =>
+  request.withFigures ? { ...measurement, figures: [...measurement.figures, ...sweepFigure(quantity, request, measurement.points)] } : measurement;
+
 const defect = (claim: Claim, reason: string): Finding => ({
   code: 'engine/defect', level: 'stops-lodging', where: claim.id,
   text: `The computation of ${claim.quantity.id} stopped on a condition it does not foresee: ${reason.slice(0, 300)}.`,
   fix: 'This is a fault of the program, not of the claim; please report it with the sheet.',
 });
 
-const distinct = (findings: readonly Finding[]): Finding[] => [...new Map(findings.map((finding) => [JSON.stringify(finding), finding])).values()];
+export const distinct = (findings: readonly Finding[]): Finding[] => [...new Map(findings.map((finding) => [JSON.stringify(finding), finding])).values()];

@@ -3,6 +3,7 @@ import type { QuantityInputs } from '@/lib/engine/contract/quantity';
 import type { Mode, Waveform } from '@/lib/engine/contract/waveform';
 import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
 import type { InputEdit } from '@/lib/explain/flip';
+import { masked } from './mask';
 
 const TWO_PI = 2 * Math.PI;
 
@@ -57,7 +58,10 @@ function editedModes(waveform: Waveform, edit: InputEdit): Waveform {
   }
 }
 
-const editedWaveform = (waveform: Waveform, edit: InputEdit): Waveform => (edit.edit === 'variable' ? { ...waveform, variable: edit.variable } : editedModes(waveform, edit));
+function editedWaveform(waveform: Waveform, edit: InputEdit): Waveform {
+  if (edit.edit === 'mask') return masked(waveform, edit);
+  return edit.edit === 'variable' ? { ...waveform, variable: edit.variable } : editedModes(waveform, edit);
+}
 
 /**
  * Inputs under another meaning of a file. One edit of one waveform or curve is made once and kept, so that what the engine

@@ -5,6 +5,7 @@ import type { Workshop } from '@/lib/engine/contract/workshop';
 import type { FlipChange } from '@/lib/explain/flip';
 import type { Prediction } from '@/lib/explain/search/node';
 import type { EditedInputs } from './edit-inputs';
+import type { SweptValue } from '@/lib/kernel/place';
 
 type Rerun = Extract<FlipChange, { kind: 'rerun' }>;
 
@@ -35,15 +36,18 @@ export function joined(changes: readonly Rerun[]): Rerun {
   }));
 }
 
+/** A word has no size. */
+const scaledBy = (value: SweptValue, by: number): SweptValue => (typeof value === 'number' ? value * by : value);
+
 /** The swept values that are asked, scaled where the change scales them. */
-function sweepOf({ claim, points }: Asked, { scaled }: Rerun): MeasureRequest['over'] {
+export function sweepOf({ claim, points }: Asked, { scaled }: Rerun): MeasureRequest['over'] {
   const { over } = claim;
   if (over === null) return null;
   const by = scaled?.setting === over.setting ? scaled.by : 1;
-  return { setting: over.setting, values: points.map((i) => (over.values[i] ?? Number.NaN) * by) };
+  return { setting: over.setting, values: points.map((i) => scaledBy(over.values[i] ?? Number.NaN, by)) };
 }
 
-function settingsOf({ settings }: Claim, { settings: changed, scaled }: Rerun): DeclaredSettings {
+export function settingsUnder({ settings }: Claim, { settings: changed, scaled }: Rerun): DeclaredSettings {
   const now = scaled === undefined ? undefined : settings[scaled.setting];
   return { ...settings, ...changed, ...(scaled === undefined || now === undefined ? {} : { [scaled.setting]: now * scaled.by }) };
 }
@@ -56,11 +60,11 @@ function settingsOf({ settings }: Claim, { settings: changed, scaled }: Rerun): 
 export function predict(asked: Asked, change: Rerun, asking: Asking): Prediction {
   const inputs = asking.edits.apply(asked.inputs, change.inputs ?? []);
   if (inputs === null) return { because: 'it leaves no noise curve' };
-  if (change.perPoint === undefined) return measured(asked.claim, inputs, settingsOf(asked.claim, change), sweepOf(asked, change), asking);
+  if (change.perPoint === undefined) return measured(asked.claim, inputs, settingsUnder(asked.claim, change), sweepOf(asked, change), asking);
   const values: (number | null)[] = [];
   for (const [k, index] of asked.points.entries()) {
     const over = sweepOf({ ...asked, points: [index] }, change);
-    const one = measured(asked.claim, inputs, { ...settingsOf(asked.claim, change), ...change.perPoint[index] }, over, asking);
+    const one = measured(asked.claim, inputs, { ...settingsUnder(asked.claim, change), ...change.perPoint[index] }, over, asking);
     if ('because' in one && k === 0) return one;
     values.push('because' in one ? null : (one.values[0] ?? null));
   }

@@ -1,7 +1,7 @@
 import type { Claim, ClaimSheet } from '@/lib/claims/claim';
 import { halfLastDigit } from '@/lib/claims/claimed';
 import { waveformNames } from '@/lib/claims/claim';
-import { routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
+import { atWords, routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
 import type { Measurement } from '@/lib/engine/contract/measurement';
 import { guessWaveform } from '@/lib/engine/guesses/guess-waveform';
 import type { QuantityInputs } from '@/lib/engine/contract/quantity';
@@ -39,7 +39,8 @@ export function subjectOf(weighed: Weighed, sheet: ClaimSheet, inputs: Inputs, s
   const { claim, result } = weighed;
   const points = judgedPoints(weighed);
   if (points === null) return null;
-  const context = contextOf(weighed, sheet, inputs, siblings);
+  const told = contextOf(weighed, sheet, inputs, siblings);
+  const context: FlipContext = { ...told, shown: told.waveforms.flatMap(shownBy) };
   const judged: JudgedClaim = {
     id: claim.id,
     quantity: claim.quantity.id,
@@ -56,7 +57,7 @@ export function subjectOf(weighed: Weighed, sheet: ClaimSheet, inputs: Inputs, s
 function judgedPoints({ claim, result }: Weighed): { readonly index: number; readonly point: JudgedPoint }[] | null {
   const claimed = claim.claimed.map((entry) => (entry.kind === 'value' ? entry.value : null));
   const values = result.points.map(({ value }) => value);
-  const chosen = routeBIndices(values.length, worstIndex(values, claimed, (value) => claim.quantity.naturalTolerance(value, claim.settings)));
+  const chosen = routeBIndices(values.length, worstIndex(values, claimed, (value) => claim.quantity.naturalTolerance(value, claim.settings)), atWords(claim.over?.values ?? []));
   const points = chosen.flatMap((index) => {
     const entry = claim.claimed[index];
     const found = result.points[index];
@@ -66,7 +67,8 @@ function judgedPoints({ claim, result }: Weighed): { readonly index: number; rea
   return points.length === chosen.length && points.length > 0 ? points : null;
 }
 
-function contextOf({ claim, inputs: resolved, measurement }: Weighed, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingClaim[]): FlipContext {
+/** What decides how the claim could be read otherwise; what its samples show is looked at only where readings are judged. */
+export function contextOf({ claim, inputs: resolved, measurement }: Omit<Weighed, 'result'>, sheet: ClaimSheet, inputs: Inputs, siblings: readonly SiblingClaim[]): FlipContext {
   const used = new Map(measurement.settings.map((setting) => [setting.name, setting]));
   const cosmology = (used.get('cosmology')?.value as Cosmology | undefined) ?? claim.settings.cosmology ?? houseCosmology;
   const waveforms = Object.values(resolved.of).flat().filter((waveform): waveform is Waveform => waveform !== undefined);
@@ -78,7 +80,7 @@ function contextOf({ claim, inputs: resolved, measurement }: Weighed, sheet: Cla
     noise: noiseFacts(claim, resolved, sheet),
     curves: builtInCurves.map(({ id, fLowHz, fHighHz }) => ({ id, fLowHz, fHighHz })),
     texts: textsOf(claim, sheet, inputs),
-    shown: waveforms.flatMap(shownBy),
+    shown: [],
     siblings: siblings.filter(({ claimId }) => claimId !== claim.id),
     redshiftAt: (distance) => redshiftAt(distance, cosmology),
   };
