@@ -12,12 +12,3 @@ export interface Catalogue {
   /** Ids of the built-in noise curves. */
   readonly curves: readonly string[];
 }
-
-/** The whole catalogue of the format; those without a `Quantity` yet are refused by name. */
-export const quantityIds = [
-  'overlap', 'match', 'mismatch', 'fitting-factor', 'detectable-fraction', 'snr', 'snr-ratio', 'volume-ratio', 'horizon-distance', 'horizon-redshift',
-  'distinguishability-snr', 'mode-content', 'radiated-energy', 'radiated-angular-momentum', 'recoil', 'peak-luminosity', 'remnant-mass', 'remnant-spin',
-  'remnant-fit', 'ringdown-frequency', 'ringdown-damping', 'phase-difference', 'amplitude-difference', 'convergence-order', 'extrapolated-value',
-  'radius-extrapolation', 'hybrid-snr', 'em-energy', 'em-ratio', 'field-exponent', 'em-frequency', 'degeneracy', 'em-mirroring', 'disc-luminosity',
-  'cycles', 'eccentricity',
-] as const;

@@ -1,6 +1,6 @@
 import type { NoiseDeclaration, WaveformDeclaration } from '@/lib/engine/contract/layout';
 import type { Problem } from '@/lib/kernel/problem';
-import { quantityIds, type Catalogue } from './catalogue';
+import type { Catalogue } from './catalogue';
 import { checkPart } from './check-part';
 import type { Claim } from './claim';
 import { declaredRoles, missingSettings, parseNoiseName, parseRoles, settingAgainstWaveforms, variableProblems } from './claim-inputs';
@@ -45,11 +45,9 @@ export function parseClaim(value: unknown, index: number, around: Surroundings, 
 }
 
 function unknownQuantity(id: string, where: string, catalogue: Catalogue): Problem {
-  const built = [...catalogue.quantities.keys()];
-  if ((quantityIds as readonly string[]).includes(id))
-    return { code: 'claims/not-built-yet', where, saw: `the quantity "${id}"`, expected: `a quantity that this version computes (${built.join(', ')})`, hint: `"${id}" belongs to the format, but is not computed yet.` };
-  const hint = didYouMean(id, quantityIds);
-  return { code: 'claims/unknown-name', where, saw: `the unknown quantity ${describe(id)}`, expected: `one of ${built.join(', ')}`, ...(hint ? { hint } : {}) };
+  const known = [...catalogue.quantities.keys()];
+  const hint = didYouMean(id, known);
+  return { code: 'claims/unknown-name', where, saw: `the unknown quantity ${describe(id)}`, expected: `one of ${known.join(', ')}`, ...(hint ? { hint } : {}) };
 }
 
 /** "more than 0.98 at every mass" is one inequality for a whole sweep. */

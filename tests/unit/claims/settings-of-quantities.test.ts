@@ -1,5 +1,4 @@
 import { describe, expect, it } from 'vitest';
-import { quantityIds } from '@/lib/claims/catalogue';
 import { settingSchema } from '@/lib/claims/setting-schema';
 import { builtInCurve } from '@/lib/engine/noise/built-in-curves';
 import { settingsTable } from '@/lib/engine/quantities/settings-table';
@@ -8,8 +7,7 @@ import { catalogue } from '@/lib/pipeline/catalogue';
 const quantities = [...catalogue.quantities.values()];
 
 describe('every quantity that can be claimed', () => {
-  it.each(quantities.map((quantity) => [quantity.id, quantity] as const))('%s is in the format, and takes only settings that the table describes', (id, quantity) => {
-    expect(quantityIds).toContain(id);
+  it.each(quantities.map((quantity) => [quantity.id, quantity] as const))('%s takes only settings that the table describes', (id, quantity) => {
     expect(catalogue.quantities.get(id)).toBe(quantity);
     expect(quantity.settings.filter((name) => !settingsTable.has(name))).toEqual([]);
     expect(quantity.sweepable.filter((name) => !settingsTable.has(name))).toEqual([]);
