@@ -86,7 +86,6 @@ describe('a bad sheet is refused with every problem, its place, what was seen an
     ['a misspelt name', { ...good(), titel: 'x' }, '/titel: saw the unknown name "titel"; expected one of format, title, statement, waveforms, noise, claims. Did you mean "title"?'],
     ['something else than an object', [1], 'saw [1]; expected a claim sheet'],
     ['a misspelt quantity', withClaim(match({ quantity: 'missmatch' })), '/claims/0/quantity: saw the unknown quantity "missmatch"'],
-    ['a quantity that is not built yet', withClaim(match({ quantity: 'recoil' })), '/claims/0/quantity: saw the quantity "recoil"; expected a quantity that this version computes (match, overlap, snr, radiated-energy). "recoil" belongs to the format, but is not computed yet.'],
     ['a misspelt setting', withClaim(match({ settings: { totalMassMsun: 60, fLowHertz: 20 } })), '/claims/0/settings/fLowHertz: saw the unknown name "fLowHertz"'],
     ['a setting in other letters', withClaim(match({ settings: { totalmassmsun: 60 } })), 'Did you mean "totalMassMsun"?'],
     ['a setting of another quantity', withClaim(match({ settings: { totalMassMsun: 60, detectors: 2 } })), '/claims/0/settings/detectors: saw the setting "detectors"; expected a setting of match: '],
