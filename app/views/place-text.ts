@@ -1,3 +1,5 @@
+import type { Place } from '@/lib/kernel/place';
+
 const names: Readonly<Record<string, readonly [words: string, unit: string]>> = {
   totalMassMsun: ['', 'M⊙'],
   distanceMpc: ['at', 'Mpc'],
@@ -9,7 +11,7 @@ const names: Readonly<Record<string, readonly [words: string, unit: string]>> = 
 };
 
 /** Where on a sweep: `60 M⊙`, `from 20 Hz`; null for a single value. */
-export function placeText(at: Readonly<Record<string, number>>): string | null {
+export function placeText(at: Place): string | null {
   const parts = Object.entries(at).map(([name, value]) => {
     const [words, unit] = names[name] ?? [name, ''];
     return [words, String(value).replace('-', '−'), unit].filter(Boolean).join(' ');

@@ -12,7 +12,7 @@ const claim = z.looseObject({
   covered: z.boolean(),
   points: z.array(
     z.looseObject({
-      at: z.record(z.string(), z.number()),
+      at: z.record(z.string(), z.union([z.number(), z.string()])),
       printed: z.string(),
       value: z.number().nullable(),
       expandedUncertainty: z.number().nullable(),

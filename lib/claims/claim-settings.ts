@@ -1,14 +1,15 @@
 import type { Quantity } from '@/lib/engine/contract/quantity';
 import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settings';
+import type { SweptValue } from '@/lib/kernel/place';
 import type { Problem } from '@/lib/kernel/problem';
 import type { Catalogue } from './catalogue';
 import { checkPart, unknownName } from './check-part';
 import { describe, pointer } from './pointer';
-import { settingSchema, sweptExpectation, sweptNumber, sweptSchema } from './setting-schema';
+import { settingSchema, sweptExpectation, sweptSchema, sweptValue } from './setting-schema';
 
 const mostSwept = 2000;
 type Path = readonly PropertyKey[];
-export type Sweep = { readonly setting: SettingName; readonly values: readonly number[] };
+export type Sweep = { readonly setting: SettingName; readonly values: readonly SweptValue[] };
 
 /** Settings of one claim: known, allowed for its quantity, of the right type, inside their range. */
 export function parseSettings(raw: Readonly<Record<string, unknown>>, quantity: Quantity, catalogue: Catalogue, path: Path, problems: Problem[]): DeclaredSettings {
@@ -85,7 +86,7 @@ export function parseSweep(raw: Readonly<Record<string, unknown>>, quantity: Qua
   return { setting: row.name, values: sweptValues(raw[name], row, at, problems) };
 }
 
-function sweptValues(values: unknown, row: Parameters<typeof settingSchema>[0], at: Path, problems: Problem[]): number[] {
+function sweptValues(values: unknown, row: Parameters<typeof settingSchema>[0], at: Path, problems: Problem[]): SweptValue[] {
   if (!Array.isArray(values) || values.length === 0 || values.length > mostSwept) {
     problems.push({ code: 'claims/sweep', where: pointer(...at), saw: describe(values), expected: `a list of 1 to ${mostSwept} values` });
     return [];
@@ -93,8 +94,8 @@ function sweptValues(values: unknown, row: Parameters<typeof settingSchema>[0], 
   const schema = sweptSchema(row);
   return values.flatMap((value, i) => {
     const parsed = checkPart(schema, value, [...at, i], [], problems);
-    const number = sweptNumber(row, parsed);
-    if (number !== null) return [number];
+    const swept = sweptValue(row, parsed);
+    if (swept !== null) return [swept];
     if (parsed !== null) problems.push({ code: 'claims/sweep', where: pointer(...at, i), saw: describe(value), expected: sweptExpectation(row) });
     return [];
   });
@@ -104,6 +105,7 @@ function sweptValues(values: unknown, row: Parameters<typeof settingSchema>[0], 
 export function sweptBandProblems(settings: DeclaredSettings, sweep: Sweep | null, path: Path): Problem[] {
   if (!sweep) return [];
   return sweep.values.flatMap((value, i) => {
+    if (typeof value !== 'number') return [];
     const low = sweep.setting === 'fLowHz' ? value : settings.fLowHz;
     const high = sweep.setting === 'fHighHz' ? value : settings.fHighHz;
     const swept = sweep.setting === 'fLowHz' || sweep.setting === 'fHighHz';

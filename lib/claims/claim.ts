@@ -1,6 +1,7 @@
 import type { NoiseDeclaration, WaveformDeclaration } from '@/lib/engine/contract/layout';
 import type { ListRole, Quantity, SingleRole } from '@/lib/engine/contract/quantity';
 import type { DeclaredSettings, SettingName } from '@/lib/engine/contract/settings';
+import type { SweptValue } from '@/lib/kernel/place';
 import type { Claimed } from './claimed';
 
 /** Role to the waveform's name in the sheet; a list, or the members of a series, in the order of the sheet. */
@@ -16,7 +17,7 @@ export interface Claim {
   readonly of: ClaimRoles;
   readonly noise: string | null;
   readonly settings: DeclaredSettings;
-  readonly over: { readonly setting: SettingName; readonly values: readonly number[] } | null;
+  readonly over: { readonly setting: SettingName; readonly values: readonly SweptValue[] } | null;
   /** One entry a point. */
   readonly claimed: readonly Claimed[];
   /** Declared, or null for the natural one. */

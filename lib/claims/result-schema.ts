@@ -5,7 +5,7 @@ const nullable = z.number().nullable();
 const verdict = z.enum(['agrees', 'differs', 'unsettled', 'not-computable', 'routes-disagree']);
 
 const point = z.looseObject({
-  at: z.record(z.string(), z.number()),
+  at: z.record(z.string(), z.union([z.number(), z.string()])),
   claimed: z.union([z.number(), z.object({ above: z.number() }), z.object({ below: z.number() })]),
   printed: z.string(),
   tolerance: nullable,

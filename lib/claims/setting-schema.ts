@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import type { SettingRow, SettingShape } from '@/lib/engine/quantities/settings-table';
+import type { SweptValue } from '@/lib/kernel/place';
 
 /** Schema of one setting, from its row of the settings table; the message is what was expected. */
 export function settingSchema(row: SettingRow): z.ZodType {
@@ -18,12 +19,12 @@ export function sweptSchema(row: SettingRow): z.ZodType {
 }
 
 /** What a sweep over the setting takes, in words. */
-export const sweptExpectation = (row: SettingRow): string => (row.shape.kind === 'place' && row.shape.swept !== undefined ? `{"${row.shape.swept}": number} in each entry` : `numbers in a sweep (${expectation(row)})`);
+export const sweptExpectation = (row: SettingRow): string => (row.shape.kind === 'place' && row.shape.swept !== undefined ? `{"${row.shape.swept}": number} in each entry` : `in each entry ${expectation(row)}`);
 
-/** The number in a value of a sweep; null where it has none. */
-export function sweptNumber({ shape }: SettingRow, value: unknown): number | null {
+/** What a sweep goes over: a number, the word of a setting that has words, or the one number of a place; null where there is none of them. */
+export function sweptValue({ shape }: SettingRow, value: unknown): SweptValue | null {
   const inner = shape.kind === 'place' && shape.swept !== undefined && typeof value === 'object' && value !== null ? (value as Readonly<Record<string, unknown>>)[shape.swept] : value;
-  return typeof inner === 'number' ? inner : null;
+  return typeof inner === 'number' || typeof inner === 'string' ? inner : null;
 }
 
 /** What the setting takes, in words. */

@@ -12,10 +12,11 @@ import { HashedFiles, type StreamingDigest } from './hashed-files';
 import { measureClaim } from './measure-claim';
 import { readInputs } from './read-inputs';
 import type { Source } from './reproduce-with';
+import type { Place } from '@/lib/kernel/place';
 
 /** One number of a first look: by one route, with an uncertainty that nobody has assessed. */
 export interface PreviewPoint {
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   /** As the author printed it. */
   readonly printed: string;
   /** Null where it could not be computed; the findings say why. */

@@ -1,11 +1,11 @@
-import { isFiniteNumber } from '@/lib/kernel/finite';
+import { samePlace, type Place } from '@/lib/kernel/place';
 import type { ResultDocument, ResultPoint } from '@/lib/pipeline/result';
 
 /** The number a thread hangs on: a claim, and one point of it where the claim is a sweep. */
 export interface Anchor {
   readonly claim: string;
   /** The swept setting at the point, e.g. `{ totalMassMsun: 60 }`; null for the claim as a whole. */
-  readonly at: Readonly<Record<string, number>> | null;
+  readonly at: Place | null;
 }
 
 /** What the number was when the thread was opened; kept, so that a later revision can say what changed. */
@@ -18,20 +18,6 @@ export type ReAnchoring =
   | { readonly standing: 'same' }
   | { readonly standing: 'changed'; readonly was: AnchoredNumber; readonly now: AnchoredNumber }
   | { readonly standing: 'lost'; readonly was: AnchoredNumber };
-
-/** Abscissae travel through decimal text, so equality is to nine digits and not to the bit. */
-const ABSCISSA_TOLERANCE = 1e-9;
-
-function samePlace(a: Readonly<Record<string, number>>, b: Readonly<Record<string, number>>): boolean {
-  const keys = Object.keys(a);
-  if (keys.length !== Object.keys(b).length) return false;
-  return keys.every((key) => {
-    const x = a[key];
-    const y = b[key];
-    if (!isFiniteNumber(x) || !isFiniteNumber(y)) return false;
-    return Math.abs(x - y) <= ABSCISSA_TOLERANCE * Math.max(Math.abs(x), Math.abs(y));
-  });
-}
 
 const numberOf = (point: ResultPoint): AnchoredNumber => ({ printed: point.printed, value: point.value });
 

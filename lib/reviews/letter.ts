@@ -1,13 +1,14 @@
 import type { ResultClaim, ResultDocument } from '@/lib/pipeline/result';
 import type { Anchor } from './anchors';
 import { isOpen, type ThreadKind, type ThreadState, type ThreadVisibility } from './threads';
+import type { Place } from '@/lib/kernel/place';
 
 /** The part of a letter that the machine drafts: the numbers and the points. The prose is the editor's. */
 export interface LetterNumber {
   readonly claim: string;
   readonly quantity: string;
   readonly unit: string;
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   /** As the authors printed it. */
   readonly claimed: string;
   readonly recomputed: number | null;

@@ -1,4 +1,5 @@
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
+import type { Place } from '@/lib/kernel/place';
 
 /**
  * What a newer engine makes of a published record. One point beside the other: a verdict that changed, or a number that
@@ -9,7 +10,7 @@ export type Move = (typeof MOVES)[number];
 
 export interface MovedNumber {
   readonly claimId: string;
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   readonly before: number | null;
   readonly now: number | null;
   readonly expandedUncertainty: number | null;
@@ -33,7 +34,7 @@ export const staysValid = (numbers: readonly MovedNumber[]): boolean => numbers.
 
 function compare(claimId: string, point: ResultPoint, again: ResultPoint | undefined): MovedNumber {
   const expandedUncertainty = point.expandedUncertainty;
-  const numbers = { claimId, at: point.at as Readonly<Record<string, number>>, before: point.value, now: again?.value ?? null, expandedUncertainty };
+  const numbers = { claimId, at: point.at as Place, before: point.value, now: again?.value ?? null, expandedUncertainty };
   return { ...numbers, move: again?.verdict === point.verdict ? sizeOf(numbers) : 'beyond U' };
 }
 

@@ -48,14 +48,14 @@ function narrowerScope(points: readonly WeighedPoint[]): string | null {
   return `narrower scope: holds at ${holding.length} of ${points.length} points (${setting} ${runs(points, setting)})`;
 }
 
-/** Neighbouring points that hold are told as a range. */
+/** Neighbouring points that hold are told as a range; words, between which nothing lies, each by itself. */
 function runs(points: readonly WeighedPoint[], setting: string): string {
   const told: string[] = [];
   for (let i = 0; i < points.length; i++) {
     if (points[i]?.word !== 'agrees') continue;
     let last = i;
-    while (points[last + 1]?.word === 'agrees') last++;
     const from = points[i]?.measured.at[setting];
+    while (typeof from === 'number' && points[last + 1]?.word === 'agrees' && typeof points[last + 1]?.measured.at[setting] === 'number') last++;
     const to = points[last]?.measured.at[setting];
     told.push(last === i ? `${from}` : last === i + 1 ? `${from}, ${to}` : `${from} to ${to}`);
     i = last;

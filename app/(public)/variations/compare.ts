@@ -1,9 +1,10 @@
+import { samePlace, type Place } from '@/lib/kernel/place';
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
 import type { VariationChanges } from '@/lib/services/variations/variation-view';
 
 /** One place of a claim: the official number, the varied one, and how far they are apart. */
 export interface ComparedPoint {
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   readonly official: Pick<ResultPoint, 'value' | 'expandedUncertainty'> | null;
   readonly varied: Pick<ResultPoint, 'value' | 'expandedUncertainty'> | null;
   /** Varied − official, or the logarithm of their ratio on that scale; null where either is missing. */
@@ -12,17 +13,13 @@ export interface ComparedPoint {
   readonly inTolerances: number | null;
 }
 
-type Place = Readonly<Record<string, number>>;
-const near = (a: number, b: number): boolean => Math.abs(a - b) <= 1e-9 * Math.max(Math.abs(a), Math.abs(b));
-const samePlace = (a: Place, b: Place): boolean => Object.keys(a).length === Object.keys(b).length && Object.entries(a).every(([name, value]) => near(value, b[name] ?? NaN));
-
 /** Where a swept setting was given one value, that value is the place. */
 function placeOf(point: ResultPoint, official: ResultClaim, changes: VariationChanges): Place {
   if (Object.keys(point.at).length > 0) return point.at;
   const [name] = Object.keys(official.points[0]?.at ?? {});
   const given = name === undefined ? undefined : changes.settings?.[name];
   const value = typeof given === 'object' && given !== null ? Object.values(given)[0] : given;
-  return name !== undefined && typeof value === 'number' ? { [name]: value } : point.at;
+  return name !== undefined && (typeof value === 'number' || typeof value === 'string') ? { [name]: value } : point.at;
 }
 
 const difference = (varied: number, official: number, scale: 'absolute' | 'ln'): number => (scale === 'ln' ? Math.log(varied / official) : varied - official);

@@ -2,6 +2,7 @@ import type { Quantity } from '@/lib/engine/contract/quantity';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import type { ClaimHeading } from './record-view';
 import { formatAt, formatSetting } from './setting-names';
+import type { Place } from '@/lib/kernel/place';
 
 type QuantityWords = Pick<Quantity, 'title' | 'formula' | 'scale'>;
 
@@ -51,7 +52,7 @@ export function headingOf(claim: Omit<ResultClaim, 'candidates'>, quantity: Quan
 }
 
 /** Where a single value stands: the total mass it was computed at, or nothing to say. */
-export function placeOf(claim: ResultClaim | undefined, at: Readonly<Record<string, number>>): string | null {
+export function placeOf(claim: ResultClaim | undefined, at: Place): string | null {
   if (Object.keys(at).length > 0) return formatAt(at);
   const mass = claim?.settings.find((setting) => setting.name === 'totalMassMsun');
   return typeof mass?.value === 'number' ? formatSetting('totalMassMsun', mass.value) : null;

@@ -9,6 +9,7 @@ import type { ReactNode } from 'react';
 import type { FiguresByClaim, ResultDocument, VerdictWord } from '@/lib/pipeline/result';
 import type { ProgressStep } from '../primitives/progress';
 import type { ConventionNote, SettingReadings } from './convention-words';
+import type { Place } from '@/lib/kernel/place';
 
 export type RecordMode = 'draft' | 'review' | 'public';
 
@@ -22,7 +23,7 @@ export interface RecordPerson {
 
 /** A claimed value as the sheet has it, before any run. */
 export interface ClaimedPoint {
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   /** As the author printed it, e.g. `0.9984(3)`; bounds as `> 0.999`. */
   readonly printed: string;
   readonly tolerance: number | null;

@@ -1,6 +1,7 @@
 /** Settings in words: how each name of the sheet is labelled, in which unit, and how its value is printed. */
 import { formatNumber, readable } from '../math/format-number';
 import { unitText } from '../math/units';
+import type { Place } from '@/lib/kernel/place';
 
 interface SettingWords {
   readonly label: string;
@@ -91,5 +92,5 @@ export function formatSetting(name: string, value: unknown, unit?: string): stri
 }
 
 /** A sweep's point in words: `60 M⊙`. */
-export const formatAt = (at: Readonly<Record<string, number>>): string =>
-  Object.entries(at).map(([name, value]) => (settingUnit(name) ? formatSetting(name, value) : `${settingLabel(name)} ${formatNumber(value)}`)).join(', ');
+export const formatAt = (at: Place): string =>
+  Object.entries(at).map(([name, value]) => (settingUnit(name) ? formatSetting(name, value) : `${settingLabel(name)} ${typeof value === 'number' ? formatNumber(value) : value}`)).join(', ');

@@ -123,7 +123,7 @@ export function pairPreparer(request: MeasureRequest): (at: At) => PairPoint | F
     B: once(() => remembering(pairOnSplines(a.tones.B, b.tones.B))),
   };
   const settingsAt = (at: ReadAt): AlignmentSettings => ({ alignment: declared.alignment ?? houseValues.alignment, window: declared.window ?? null, at });
-  return (swept) => ({ a, b, mode: sighted ? null : mode, severalModes: recordA.modes.length > 1, routes, settings: settingsAt(swept.at === undefined ? placeIn(declared.at) : { timeM: swept.at }) });
+  return (swept) => ({ a, b, mode: sighted ? null : mode, severalModes: recordA.modes.length > 1, routes, settings: settingsAt(typeof swept.at === 'number' ? { timeM: swept.at } : placeIn(declared.at)) });
 }
 
 export type Which = 'phase' | 'amplitude';

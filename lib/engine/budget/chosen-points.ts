@@ -1,3 +1,5 @@
+import type { SweptValue } from '@/lib/kernel/place';
+
 /**
  * The point furthest from its claim in units of the tolerance; the first where nothing is claimed as a value.
  * Shape:  values and claimed are parallel; an index comes back.
@@ -23,24 +25,35 @@ export function worstIndex(
   return worst;
 }
 
-const spread = (n: number, always: readonly number[], others: number): number[] => {
-  const chosen = new Set(always);
-  for (let k = 1; k <= others; k++) chosen.add(Math.round((k * (n - 1)) / (others + 1)));
+/** Some of a list of places: all up to `most`; of more both ends, those that must be there and some between. */
+function chosenOf(places: readonly number[], most: number, between: number, always: number): number[] {
+  const n = places.length;
+  if (n <= most) return [...places];
+  const chosen = new Set([places[0]!, places[n - 1]!, ...(places.includes(always) ? [always] : [])]);
+  for (let k = 1; k <= between; k++) chosen.add(places[Math.round((k * (n - 1)) / (between + 1))]!);
   return [...chosen].sort((p, q) => p - q);
-};
+}
 
-/** Where route B runs: every point up to ten; of more, both ends, the worst and eight spread between. */
-export const routeBIndices = (n: number, worst: number): number[] =>
-  n <= 10 ? Array.from({ length: n }, (_, i) => i) : spread(n, [0, worst, n - 1], 8);
+/** Nothing lies between words of a sweep: each is asked by itself, and the numbers among themselves. */
+function chosen(n: number, alone: readonly number[], most: number, between: number, always: number): number[] {
+  const numbers = Array.from({ length: n }, (_, i) => i).filter((i) => !alone.includes(i));
+  return [...alone, ...chosenOf(numbers, most, between, always)].sort((p, q) => p - q);
+}
 
-/** Where the error bar is measured: every point up to five; of more, both ends, the worst and two between. */
-export const errorBarIndices = (n: number, worst: number): number[] =>
-  n <= 5 ? Array.from({ length: n }, (_, i) => i) : spread(n, [0, worst, n - 1], 2);
+/** Points of a sweep that stand at a word. */
+export const atWords = (values: readonly SweptValue[]): number[] => values.flatMap((value, i) => (typeof value === 'string' ? [i] : []));
 
-/** The larger of the two measured neighbours. */
-export function fromNeighbours(n: number, measured: ReadonlyMap<number, number>): number[] {
-  const indices = [...measured.keys()].sort((p, q) => p - q);
+/** Where route B runs: every point up to ten; of more, both ends, the worst and eight spread between; every word. */
+export const routeBIndices = (n: number, worst: number, alone: readonly number[] = []): number[] => chosen(n, alone, 10, 8, worst);
+
+/** Where the error bar is measured: every point up to five; of more, both ends, the worst and two between; every word. */
+export const errorBarIndices = (n: number, worst: number, alone: readonly number[] = []): number[] => chosen(n, alone, 5, 2, worst);
+
+/** The larger of the two measured neighbours; a point at a word is nobody's neighbour. */
+export function fromNeighbours(n: number, measured: ReadonlyMap<number, number>, alone: readonly number[] = []): number[] {
+  const indices = [...measured.keys()].filter((i) => !alone.includes(i)).sort((p, q) => p - q);
   return Array.from({ length: n }, (_, i) => {
+    if (alone.includes(i)) return measured.get(i)!;
     const below = indices.filter((k) => k <= i).at(-1) ?? indices[0]!;
     const above = indices.find((k) => k >= i) ?? indices[indices.length - 1]!;
     return Math.max(measured.get(below)!, measured.get(above)!);

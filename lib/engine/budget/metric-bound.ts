@@ -130,7 +130,7 @@ function fractionBound({ rerun, request, index }: BoundContext, known: readonly 
   };
   const slack = worst(known.filter(({ waveform }) => signals.has(waveform))) + worst(known.filter(({ waveform }) => !signals.has(waveform)));
   const { over, settings } = request;
-  const threshold = over?.setting === 'threshold' ? over.values[index]! : (settings.threshold ?? houseMatchThreshold);
+  const threshold = over?.setting === 'threshold' ? Number(over.values[index]) : (settings.threshold ?? houseMatchThreshold);
   const at = mismatchBound(1 - threshold, [slack * slack], most);
   const asked = (match: number): number | null => (over?.setting === 'threshold' ? rerun({ swept: match }) : rerun({ settings: { threshold: match } }));
   const [low, high] = [asked(1 - at.low), asked(1 - at.high)];

@@ -1,6 +1,7 @@
 import type { MeasureRequest, Quantity, QuantityInputs, Watch } from '../contract/quantity';
 import type { DeclaredSettings } from '../contract/settings';
 import type { Waveform } from '../contract/waveform';
+import type { SweptValue } from '@/lib/kernel/place';
 
 /** What is different in a second computation of the same number. */
 export interface Change {
@@ -8,7 +9,7 @@ export interface Change {
   /** Put in the place of every waveform of the claim. */
   readonly waveform?: (given: Waveform) => Waveform;
   /** Instead of the swept setting's value at this point. */
-  readonly swept?: number;
+  readonly swept?: SweptValue;
 }
 
 /** The claim's number at its worst point once more, by route A; null where the change leaves nothing to compute. */

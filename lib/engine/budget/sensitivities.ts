@@ -5,6 +5,7 @@ import type { Waveform } from '../contract/waveform';
 import { waveformsOf } from './relatives';
 import type { Change, Rerun } from './rerun';
 import { stepsOf } from './setting-steps';
+import type { SweptValue } from '@/lib/kernel/place';
 
 /** Ten times what one number costs with its two routes, its error bar and its budget, counted in single computations by route A. */
 const MOST_RERUNS = 120;
@@ -36,14 +37,16 @@ function usedHere({ name, value }: UsedSetting, { request: { over }, measurement
   return measurement.points[index]?.settings?.[name] ?? value;
 }
 
+const isSwept = (tried: unknown): tried is SweptValue => typeof tried === 'number' || typeof tried === 'string';
+
 function changeTo(setting: string, tried: unknown, { over }: MeasureRequest): Change {
   if (setting === 'negativeM') return { waveform: (given) => ({ ...given, negativeM: tried as Waveform['negativeM'] }) };
-  if (over?.setting === setting && typeof tried === 'number') return { swept: tried };
+  if (over?.setting === setting && isSwept(tried)) return { swept: tried };
   return { settings: { [setting]: tried } };
 }
 
-/** A swept setting can only be put at another number of its own kind. */
-const canTry = (setting: string, tried: unknown, { over }: MeasureRequest): boolean => over?.setting !== setting || typeof tried === 'number';
+/** A swept setting can only be put at another number or word of its own kind. */
+const canTry = (setting: string, tried: unknown, { over }: MeasureRequest): boolean => over?.setting !== setting || isSwept(tried);
 
 /**
  * Every setting in use put elsewhere, one at a time: what the number at the worst point then is.

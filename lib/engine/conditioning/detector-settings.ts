@@ -7,6 +7,7 @@ import { MSUN_PER_MPC, MSUN_S } from '@/lib/engine/units/constants';
 import { luminosityDistanceMpc, redshiftAt, type Cosmology } from '@/lib/engine/units/cosmology';
 import type { ConditionedWaveform } from './condition-waveform';
 import { nyquistFrequency } from './nyquist-frequency';
+import type { Place } from '@/lib/kernel/place';
 
 /** What a quantity makes of the common settings. */
 export interface DetectorTraits {
@@ -31,7 +32,7 @@ export type Average = 'optimal' | 'sky' | 'sky-orientation' | 'volume';
 
 /** Effective settings of one point, defaults filled in. */
 export interface DetectorPoint {
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   readonly declared: DeclaredSettings;
   readonly massMsun: number | null;
   readonly massFrame: 'detector' | 'source';
@@ -84,7 +85,7 @@ function strainPerUnit(w: Waveform, massMsun: number | null, redshift: number, d
 
 export interface PointRequest {
   readonly declared: DeclaredSettings;
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   readonly a: ConditionedWaveform;
   readonly b: ConditionedWaveform | null;
   /** Lists, for quantities that take them; `a` is then the first of the signals. */

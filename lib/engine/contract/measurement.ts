@@ -1,6 +1,7 @@
 import type { Finding } from './finding';
 import type { MetricBound } from './metric-bound';
 import type { Sensitivity } from './sensitivity';
+import type { Place } from '@/lib/kernel/place';
 
 /** One line of the error budget. `u` is null when the component cannot be estimated: unknown is never zero. */
 export interface BudgetLine {
@@ -22,7 +23,7 @@ export interface BudgetLine {
 
 export interface MeasuredPoint {
   /** The swept setting at this point, e.g. `{ totalMassMsun: 60 }`; empty for a single value. */
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   /** The reported value (route A), or null when not computable. */
   readonly value: number | null;
   readonly routes: { readonly A: number | null; readonly B: number | null };
@@ -40,8 +41,9 @@ export interface Figure {
   readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux' | 'curve';
   readonly title: string;
   /** The point that is drawn, of a sweep; absent where the figure is of all points. */
-  readonly at?: Readonly<Record<string, number>>;
-  readonly x: { readonly label: string; readonly unit: string; readonly scale: 'linear' | 'log'; readonly values: readonly number[] };
+  readonly at?: Place;
+  /** Where the axis goes over words, they stand at the places 0, 1, 2, … and nothing lies between them. */
+  readonly x: { readonly label: string; readonly unit: string; readonly scale: 'linear' | 'log'; readonly values: readonly number[]; readonly words?: readonly string[] };
   readonly series: readonly FigureSeries[];
 }
 export interface FigureSeries {

@@ -4,6 +4,7 @@ import type { NoiseCurve } from './noise-curve';
 import type { DeclaredSettings, SettingName } from './settings';
 import type { Variable, Waveform } from './waveform';
 import type { Workshop } from './workshop';
+import type { Place, SweptValue } from '@/lib/kernel/place';
 
 /** A part that one waveform plays in a claim. */
 export type SingleRole = 'a' | 'b' | 'em' | 'gw';
@@ -24,7 +25,7 @@ export interface MeasureRequest {
   readonly inputs: QuantityInputs;
   readonly settings: DeclaredSettings;
   /** The swept setting and its values, or null for a single value. */
-  readonly over: { readonly setting: SettingName; readonly values: readonly number[] } | null;
+  readonly over: { readonly setting: SettingName; readonly values: readonly SweptValue[] } | null;
   /** Claimed values by point, for choosing the worst point; null entries for inequalities. */
   readonly claimed: readonly (number | null)[];
   /** Figures cost time; the command line with --json does not ask for them. */
@@ -94,7 +95,7 @@ export const unitOf = ({ unit, follows }: Pick<Quantity, 'unit' | 'follows'>, de
   (follows === undefined ? undefined : follows.words[String(declared[follows.setting] ?? follows.houseDefault)]?.unit) ?? unit;
 
 /** A stop: the quantity cannot be computed; the findings say why. */
-export const notComputable = (findings: readonly Finding[], points: readonly Readonly<Record<string, number>>[]): Measurement => ({
+export const notComputable = (findings: readonly Finding[], points: readonly Place[]): Measurement => ({
   points: points.map((at) => ({ at, value: null, routes: { A: null, B: null }, expandedUncertainty: null })),
   budget: [],
   findings,

@@ -7,8 +7,9 @@ import { selectModes } from '../conditioning/select-modes';
 import type { RadiationRecipe } from './radiation-recipe';
 import { radiationSettings, type RadiationSettings } from './radiation-settings';
 import { divisionsTo, radiationRecord, type RadiationRecord } from './radiation-record';
+import type { Place } from '@/lib/kernel/place';
 
-export type At = Readonly<Record<string, number>>;
+export type At = Place;
 
 /** One point ready to be computed, or the reasons why not. */
 export interface PreparedPoint {

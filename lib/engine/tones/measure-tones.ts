@@ -7,8 +7,9 @@ import { Cancelled, notComputable, type MeasureRequest, type Watch } from '../co
 import type { ModeIndex } from '../contract/settings';
 import type { Mode } from '../contract/waveform';
 import { recordFindings } from '../findings/record-findings';
+import type { Place } from '@/lib/kernel/place';
 
-export type At = Readonly<Record<string, number>>;
+export type At = Place;
 
 /** What route A says at one point. */
 export interface Reading {

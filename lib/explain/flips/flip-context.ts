@@ -3,6 +3,7 @@ import type { UsedSetting } from '@/lib/engine/contract/measurement';
 import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { SettingName } from '@/lib/engine/contract/settings';
 import type { Waveform } from '@/lib/engine/contract/waveform';
+import type { Place } from '@/lib/kernel/place';
 
 /** Words that came with the sheet: its statement, comments in the heads of files. */
 export interface Written {
@@ -38,7 +39,7 @@ export interface FlipContext {
   readonly claim: Claim;
   /** Settings in force, by name. */
   readonly used: ReadonlyMap<string, UsedSetting>;
-  readonly points: readonly { readonly at: Readonly<Record<string, number>>; readonly value: number | null }[];
+  readonly points: readonly { readonly at: Place; readonly value: number | null }[];
   readonly waveforms: readonly Waveform[];
   readonly noise: NoiseFacts | null;
   /** Published curves with their range. */
@@ -70,7 +71,10 @@ export const isAssumed = ({ claim, used }: FlipContext, name: SettingName): bool
 
 /** The value of a setting at each point, swept or not; null where it is no number. */
 export const atPoints = (context: FlipContext, name: SettingName): (number | null)[] =>
-  context.points.map(({ at }) => at[name] ?? numberInForce(context, name));
+  context.points.map(({ at }) => {
+    const swept = at[name];
+    return typeof swept === 'number' ? swept : numberInForce(context, name);
+  });
 
 /** The redshift of the source as far as the claim tells it. */
 export function redshiftOf(context: FlipContext): number | null {

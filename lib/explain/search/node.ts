@@ -1,4 +1,5 @@
 import type { Flip } from '../flip';
+import type { Place } from '@/lib/kernel/place';
 
 /** One claim as the search sees it. */
 export interface JudgedClaim {
@@ -16,7 +17,7 @@ export interface JudgedClaim {
 }
 
 export interface JudgedPoint {
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   readonly claimed: number;
   /** Half a unit of the last printed digit, in the unit of the number; zero where the number was given exactly. */
   readonly halfDigit: number;

@@ -1,3 +1,4 @@
+import type { Place, SweptValue } from '@/lib/kernel/place';
 import { listOf, plainNumber } from './numbers';
 
 /** How a swept setting is said, and its unit. */
@@ -9,6 +10,7 @@ const said: Readonly<Record<string, readonly [name: string, unit: string]>> = {
   fHighHz: ['an upper cut-off of', 'Hz'],
   inclinationRad: ['an inclination of', 'rad'],
   azimuthRad: ['an azimuth of', 'rad'],
+  taper: ['a taper of', ''],
   startM: ['a start at', 'M'],
   integrationFloor: ['an integration floor of', 'rad/M'],
   lMax: ['modes up to ℓ =', ''],
@@ -16,13 +18,13 @@ const said: Readonly<Record<string, readonly [name: string, unit: string]>> = {
   fieldGauss: ['a field of', 'G'],
 };
 
-export function placeOf(setting: string, value: number, unit?: string): string {
+export function placeOf(setting: string, value: SweptValue, unit?: string): string {
   const [name, own] = said[setting] ?? [`${setting} =`, ''];
-  return [name, plainNumber(value), unit ?? own].filter((part) => part !== '').join(' ');
+  return [name, typeof value === 'number' ? plainNumber(value) : `“${value}”`, unit ?? own].filter((part) => part !== '').join(' ');
 }
 
 /** `at a total mass of 60 M☉`; empty for a single number. */
-export const atPlace = (at: Readonly<Record<string, number>>): string => {
+export const atPlace = (at: Place): string => {
   const places = Object.entries(at).map(([setting, value]) => placeOf(setting, value));
   return places.length === 0 ? '' : ` at ${listOf(places)}`;
 };

@@ -25,10 +25,13 @@ interface Free {
 
 function freeOf({ asked: { claim } }: Subject): Free | null {
   const { over, settings, quantity } = claim;
+  const swept = over?.values.filter((value) => typeof value === 'number') ?? [];
+  // Nothing lies between words, and no one of them stands for the others along another parameter.
+  if (over !== null && swept.length < over.values.length) return null;
   const setting = over?.setting ?? free.find((name) => typeof settings[name] === 'number' && quantity.sweepable.includes(name));
   if (setting === undefined) return null;
   const one = settings[setting];
-  const stated = over?.values ?? (typeof one === 'number' ? [one] : []);
+  const stated = over !== null ? swept : typeof one === 'number' ? [one] : [];
   if (stated.length === 0) return null;
   const grid = setting === 'inclinationRad' || setting === 'azimuthRad' ? angles : [...new Set(stated.slice(0, 3).flatMap((x) => aroundNumber.map((by) => rounded(x * by))))].sort((p, q) => p - q).slice(0, 14);
   return { setting, stated, grid };

@@ -3,6 +3,7 @@ import { quantities } from '@/lib/engine/quantities/registry';
 import { settingsTable } from '@/lib/engine/quantities/settings-table';
 import type { LetterNumber, LetterPoint } from '@/lib/reviews/letter';
 import type { OptionalLetter } from '@/lib/reviews/optional-letters';
+import type { Place } from '@/lib/kernel/place';
 
 /** The texts that go out. Plain text, no picture and no link but to the desk: a letter tells its reader nothing about anybody else. */
 export interface Letter {
@@ -65,7 +66,7 @@ export interface DecisionLetterFacts {
 /** Enough digits to read beside the claim; the record page has them all. */
 const shown = (value: number | null): string => (value === null ? 'not computable' : Number(value.toPrecision(6)).toString());
 const unitOf = (name: string): string => (settingsTable as ReadonlyMap<string, { readonly unit: string }>).get(name)?.unit ?? '';
-const place = (at: Readonly<Record<string, number>>): string =>
+const place = (at: Place): string =>
   Object.entries(at).map(([name, value]) => (unitOf(name) === '' ? ` at ${name} ${value}` : ` at ${value} ${unitOf(name)}`)).join(',');
 
 const numberLine = (n: LetterNumber): string =>

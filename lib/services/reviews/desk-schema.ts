@@ -7,7 +7,7 @@ import { anchorSchema, reAnchoringSchema, seenTimeSchema, seenVariationSchema, t
 
 /** `desk-view.ts`, `decision-view.ts`, `report-view.ts` and `invitation-view.ts` as schemas. */
 const level = z.union([z.literal(1), z.literal(2), z.literal(3)]);
-const at = z.record(z.string(), z.number());
+const at = z.record(z.string(), z.union([z.number(), z.string()]));
 const nullable = z.number().nullable();
 
 const letterNumber = z.object({ claim: z.string(), quantity: z.string(), unit: z.string(), at, claimed: z.string(), recomputed: nullable, expandedUncertainty: nullable, tolerance: nullable, verdict: z.string() });

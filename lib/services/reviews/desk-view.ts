@@ -4,6 +4,7 @@ import type { DecisionView } from './decision-view';
 import type { InvitationView } from './invitation-view';
 import type { EditorNoteView, ReportView } from './report-view';
 import type { ThreadView, VariationView } from './thread-view';
+import type { Place } from '@/lib/kernel/place';
 
 /**
  * Everything people said about one submission, as one reader may see it. The numbers themselves are
@@ -48,6 +49,6 @@ export interface DeskView {
 /** "This number changed: 23.71 → 23.69". */
 export interface NumberChange {
   readonly claim: string;
-  readonly at: Readonly<Record<string, number>>;
+  readonly at: Place;
   readonly standing: Exclude<ReAnchoring, { readonly standing: 'same' }>;
 }

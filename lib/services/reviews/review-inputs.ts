@@ -9,7 +9,7 @@ const body = z.string().min(1).max(10_000);
 const answer = z.string().max(REPORT_ANSWER_MAX_CHARACTERS);
 const variationId = id.optional();
 
-const anchor = z.strictObject({ claim: z.string().min(1).max(64), at: z.record(z.string().max(64), z.number()).nullable() });
+const anchor = z.strictObject({ claim: z.string().min(1).max(64), at: z.record(z.string().max(64), z.union([z.number(), z.string().max(64)])).nullable() });
 
 export const threadInput = z.strictObject({
   kind: z.enum(THREAD_KINDS),

@@ -4,7 +4,7 @@ import { changedSchema } from '@/lib/services/variations/changed-schema';
 import type { ThreadView } from './thread-view';
 
 /** `thread-view.ts` as a schema. */
-const at = z.record(z.string(), z.number());
+const at = z.record(z.string(), z.union([z.number(), z.string()]));
 const anchored = z.object({ printed: z.string().nullable(), value: z.number().nullable() });
 export const anchorSchema = z.object({ claim: z.string(), at: at.nullable() });
 export const reAnchoringSchema = z.union([

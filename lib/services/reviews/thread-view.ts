@@ -2,6 +2,7 @@ import type { VariationChanges } from '@/db/schema/variations';
 import type { SeenTime } from '@/lib/reviews/anonymity';
 import type { AnchoredNumber, ReAnchoring } from '@/lib/reviews/anchors';
 import type { Closing, Side, ThreadKind, ThreadState, ThreadVisibility } from '@/lib/reviews/threads';
+import type { Place } from '@/lib/kernel/place';
 
 /** The services of the parlour: one verb a file. This file and its neighbours `*-view.ts` are what a page may see. */
 
@@ -13,7 +14,7 @@ export interface VariationView {
   readonly changes: readonly string[];
   readonly changed: VariationChanges;
   readonly state: 'queued' | 'running' | 'finished' | 'stopped';
-  readonly points: readonly { readonly at: Readonly<Record<string, number>>; readonly value: number | null; readonly expandedUncertainty: number | null; readonly official: number | null }[];
+  readonly points: readonly { readonly at: Place; readonly value: number | null; readonly expandedUncertainty: number | null; readonly official: number | null }[];
   readonly unit: string;
   readonly note: string;
   /** Private until attached to a comment that authors can read. */
@@ -34,7 +35,7 @@ export interface CommentView {
 
 export interface AnchorView {
   readonly claim: string;
-  readonly at: Readonly<Record<string, number>> | null;
+  readonly at: Place | null;
   /** The number when the thread was opened; null values where the anchor is a sweep as a whole. */
   readonly opened: AnchoredNumber;
   readonly openedOnRevision: number;

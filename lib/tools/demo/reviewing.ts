@@ -13,6 +13,7 @@ import { takeTriage } from '@/lib/services/reviews/take-triage';
 import { listVariations } from '@/lib/services/variations/list-variations';
 import { requestVariation } from '@/lib/services/variations/request-variation';
 import { must, type DemoRoom } from './demo-room';
+import type { Place } from '@/lib/kernel/place';
 
 /** An editor takes it, asks the referees, and they accept: in review, round 1. */
 export async function beginReview(editor: SignedInActor, id: string, referees: readonly SignedInActor[]): Promise<void> {
@@ -60,7 +61,7 @@ export async function askWithRerun(room: DemoRoom, referee: SignedInActor, id: s
 
 interface Rerun {
   readonly claim: string;
-  readonly at: Readonly<Record<string, number>> | null;
+  readonly at: Place | null;
   readonly settings: Readonly<Record<string, unknown>>;
   readonly note: string;
   readonly body: string;

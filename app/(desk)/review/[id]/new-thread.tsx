@@ -8,12 +8,13 @@ import { Trouble } from '../../act-parts';
 import { useAct } from '../../use-act';
 import { openThread } from '../actions';
 import { AttachField, type Attachable } from './thread-card';
+import type { Place } from '@/lib/kernel/place';
 
 interface NewThreadProps {
   readonly submissionId: string;
   readonly claimId: string;
   readonly isAuthor: boolean;
-  readonly places: readonly { readonly at: Readonly<Record<string, number>>; readonly words: string }[];
+  readonly places: readonly { readonly at: Place; readonly words: string }[];
   readonly attachable: readonly Attachable[];
 }
 

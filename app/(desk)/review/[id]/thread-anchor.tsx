@@ -1,14 +1,8 @@
 import type { ReactNode } from 'react';
 import { Icon } from '@/app/_ui/primitives/icon';
+import { samePlace, type Place } from '@/lib/kernel/place';
 import type { NumberChange } from '@/lib/services/reviews/desk-view';
 import type { ThreadView } from '@/lib/services/reviews/thread-view';
-
-type Place = Readonly<Record<string, number>>;
-
-export const samePlace = (a: Place, b: Place): boolean => {
-  const keys = Object.keys(a);
-  return keys.length === Object.keys(b).length && keys.every((k) => Math.abs((a[k] ?? NaN) - (b[k] ?? NaN)) <= 1e-9 * Math.abs(a[k] ?? 0));
-};
 
 /** Threads hanging on this number; a claim of one point is its own whole. */
 export const threadsAt = (threads: readonly ThreadView[], claimId: string, at: Place, single: boolean): readonly ThreadView[] =>

@@ -144,55 +144,6 @@ function integrandFigure({ walk, shown, worst }: FigureContext): Figure {
   };
 }
 
-/** Thinned evenly, ends kept. */
-const thinned = (n: number): number[] =>
-  n <= MOST_POINTS
-    ? Array.from({ length: n }, (_, i) => i)
-    : Array.from({ length: MOST_POINTS }, (_, k) => Math.round((k * (n - 1)) / (MOST_POINTS - 1)));
-
-function sweepFigure({ walk, points }: FigureContext): Figure[] {
-  const { over, claimed } = walk.request;
-  if (over === null || points.length < 2) return [];
-  const kept = thinned(points.length).sort((p, q) => over.values[p]! - over.values[q]!);
-  const at = (i: number): MeasuredPoint => points[i]!;
-  const edge = (sign: number) =>
-    kept.map((i) => (at(i).value === null || at(i).expandedUncertainty === null ? null : at(i).value! + sign * at(i).expandedUncertainty!));
-  const x = kept.map((i) => over.values[i]!);
-  const wide = x[0]! > 0 && x[x.length - 1]! / x[0]! > 20;
-  const series = [
-    line(
-      'recomputed',
-      'recomputed',
-      kept.map((i) => at(i).value),
-    ),
-    line('recomputed − U', 'band-low', edge(-1)),
-    line('recomputed + U', 'band-high', edge(1)),
-    line(
-      'claimed',
-      'claimed',
-      kept.map((i) => claimed[i] ?? null),
-    ),
-  ];
-  const unit =
-    over.setting === 'totalMassMsun'
-      ? 'M☉'
-      : over.setting.endsWith('Hz')
-        ? 'Hz'
-        : over.setting.endsWith('Rad')
-          ? 'rad'
-          : over.setting.endsWith('Mpc')
-            ? 'Mpc'
-            : '';
-  return [
-    {
-      kind: 'sweep',
-      title: `Value over ${over.setting}`,
-      x: { label: over.setting, unit, scale: wide ? 'log' : 'linear', values: x },
-      series,
-    },
-  ];
-}
-
 /**
  * The figures of a detector quantity, at the point furthest from its claim.
  * Shape:  at most 1 500 points a curve; numbers that are not finite are null.
@@ -204,7 +155,7 @@ function sweepFigure({ walk, points }: FigureContext): Figure[] {
 export function detectorFigures(context: FigureContext): Figure[] {
   const { walk, found, worst } = context;
   const own = walk.quantity.recipe.ownFigures?.({ kit: walk.kitA, request: walk.requests[worst]!, found: found[worst]!, store: walk.store }) ?? [];
-  const figures = [...waveformsFigure(context), integrandFigure(context), ...own, ...sweepFigure(context)];
+  const figures = [...waveformsFigure(context), integrandFigure(context), ...own];
   const clean = (values: readonly (number | null)[]) => values.map((v) => (v !== null && Number.isFinite(v) ? v : null));
   return figures.map((figure) => ({ ...figure, series: figure.series.map((s) => ({ ...s, values: clean(s.values) })) }));
 }

@@ -1,4 +1,4 @@
-import { errorBarIndices, fromNeighbours, routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
+import { atWords, errorBarIndices, fromNeighbours, routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
 import { detectorBudget } from '@/lib/engine/budget/detector-budget';
 import { computationError, kitOf, type ComputationError } from '@/lib/engine/budget/error-bar';
 import { conditionWaveform, type ConditionedWaveform } from '@/lib/engine/conditioning/condition-waveform';
@@ -15,6 +15,7 @@ import { detectorFigures } from './figures';
 import type { Evaluated, Recipe, RouteKit } from './recipe';
 import { findingsOf, stopsOf, valueStops } from './stops';
 import { settingsByPoint, usedSettings, type SettingsContext } from './used-settings';
+import type { Place } from '@/lib/kernel/place';
 
 /** What a quantity of one detector is, beside its recipe. */
 export interface DetectorQuantity {
@@ -34,7 +35,7 @@ export interface Walk {
   readonly kitA: RouteKit;
 }
 
-const pointsOf = ({ over }: MeasureRequest): Readonly<Record<string, number>>[] =>
+const pointsOf = ({ over }: MeasureRequest): Place[] =>
   over === null ? [{}] : over.values.map((value) => ({ [over.setting]: value }));
 
 /** Of a list of signals the first stands where one waveform is asked for. */
@@ -130,14 +131,15 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
   const { recipe } = quantity;
   const values = found.map(({ value }) => finiteOrNull(value));
   const worst = worstIndex(values, request.claimed, (claimed) => quantity.naturalTolerance(claimed, request.settings));
-  const routeBPoints = routeBIndices(found.length, worst);
+  const alone = atWords(request.over?.values ?? []);
+  const routeBPoints = routeBIndices(found.length, worst, alone);
   const byB = evaluateAt(walk, { route: routeB, scan: routeB }, routeBPoints, watch, [0.4, 0.75], 'route B');
   const errors = new Map<number, ComputationError>();
-  errorBarIndices(found.length, worst).forEach((i, k, chosen) => {
+  errorBarIndices(found.length, worst, alone).forEach((i, k, chosen) => {
     step(watch, 0.75 + (0.15 * k) / chosen.length, 'error bar');
     errors.set(i, computationError(recipe, requests[i]!, found[i]!, store));
   });
-  const bars = fromNeighbours(found.length, new Map([...errors].map(([i, error]) => [i, error.expanded])));
+  const bars = fromNeighbours(found.length, new Map([...errors].map(([i, error]) => [i, error.expanded])), alone);
   step(watch, 0.9, 'error budget');
   const shown = requests.map((r, i) => recipe.shownPoint(r, found[i]!));
   const budget = detectorBudget({
