@@ -1,141 +1,7 @@
 import type { Finding } from '../contract/finding';
+import { angular, constantRatio, densityMistaken, isNamed, octaves, pointsAgainst, APART, SAME, type UploadedCurve } from '../noise/beside-built-in';
 import { builtInCurves, type BuiltInCurve } from '../noise/built-in-curves';
-import { short } from './spelt';
-
-/** An uploaded curve as one-sided power density at its own points, and what is written on it. */
-export interface UploadedCurve {
-  readonly name: string;
-  readonly f: ArrayLike<number>;
-  readonly psd: ArrayLike<number>;
-  /** Its name in the sheet, its file's name and the comment lines of the file. */
-  readonly writing: readonly string[];
-}
-
-/** Amplitude densities closer than this are the same curve printed. */
-const SAME = 0.005;
-/** Differences that are spoken of. */
-const APART = 0.03;
-/** Fits of a published curve stay further away; printed copies of one, nearer. */
-const COPIED = 3e-4;
-/** So many octaves copied in one piece are no accident. */
-const LEAST_SAME = 2;
-/** And so many octaves must be apart before anything is asked. */
-const LEAST_APART = 0.25;
-/** A relation that holds everywhere must hold over this many octaves. */
-const LEAST_RELATED = 3;
-/** At this many points, however wide the octaves that they stand for: a few agree by chance. */
-const LEAST_POINTS = 12;
-
-interface Point {
-  readonly fHz: number;
-  /** Width in octaves that the point stands for. */
-  readonly width: number;
-  /** ln of the amplitude density over that of the built-in curve. */
-  readonly apart: number;
-}
-
-/** More points than these say no more about a smooth curve. */
-const MOST_POINTS = 4000;
-
-/** The uploaded points inside a built-in curve's range; `read` says at which frequency the latter is asked. */
-function pointsAgainst({ f, psd }: UploadedCurve, curve: BuiltInCurve, read: (fHz: number) => number = (x) => x): Point[] {
-  const points: Point[] = [];
-  const stride = Math.ceil(f.length / MOST_POINTS);
-  for (let i = 0; i < f.length; i += stride) {
-    const at = read(f[i]!);
-    if (at < curve.fLowHz || at > curve.fHighHz) continue;
-    const [below, above] = [f[Math.max(0, i - stride)]!, f[Math.min(f.length - 1, i + stride)]!];
-    points.push({ fHz: f[i]!, width: Math.log2(above / below) / 2, apart: Math.log(psd[i]! / curve.psd(at)) / 2 });
-  }
-  return points;
-}
-
-const isEnough = (points: readonly Point[]): boolean => points.length >= LEAST_POINTS && octaves(points) >= LEAST_RELATED;
-
-const octaves = (points: readonly Point[]): number => points.reduce((sum, { width }) => sum + width, 0);
-
-/** Octaves of the longest piece in which every point is copied. */
-function longestSame(points: readonly Point[]): number {
-  let [best, here] = [0, 0];
-  for (const { width, apart } of points) {
-    here = Math.abs(apart) < COPIED ? here + width : 0;
-    if (here > best) best = here;
-  }
-  return best;
-}
-
-const median = (values: readonly number[]): number => [...values].sort((a, b) => a - b)[values.length >> 1] ?? Number.NaN;
-
-/** Is the amplitude density that of the built-in curve times one number? */
-function constantRatio(points: readonly Point[]): number | null {
-  if (!isEnough(points)) return null;
-  const middle = median(points.map(({ apart }) => apart));
-  return points.every(({ apart }) => Math.abs(apart - middle) < SAME) ? Math.exp(middle) : null;
-}
-
-const spread = (values: readonly number[]): boolean => values.length > 0 && values.every((x) => Math.abs(x) < SAME);
-
-/** S taken for its root or the other way round: the column was read as another density. */
-function densityMistaken(curve: UploadedCurve, known: BuiltInCurve): string | null {
-  const points = pointsAgainst(curve, known);
-  if (!isEnough(points)) return null;
-  const lnKnown = points.map(({ fHz }) => Math.log(known.psd(fHz)));
-  const lnHere = points.map(({ apart }, i) => 2 * apart + lnKnown[i]!);
-  if (spread(lnHere.map((x, i) => x - lnKnown[i]! / 2))) return 'is the square root of it: an amplitude density read as a power density?';
-  if (spread(lnHere.map((x, i) => (x - 2 * lnKnown[i]!) / 2))) return 'is the square of it: a power density read as an amplitude density?';
-  return null;
-}
-
-const angular = (curve: UploadedCurve, known: BuiltInCurve): boolean => {
-  const points = pointsAgainst(curve, known, (x) => x / (2 * Math.PI));
-  return isEnough(points) && spread(points.map(({ apart }) => apart));
-};
-
-interface Octave {
-  readonly fromHz: number;
-  readonly toHz: number;
-  readonly ratio: number;
-}
-
-/** Median ratio octave by octave, neighbours that agree drawn together. */
-function byOctave(points: readonly Point[]): Octave[] {
-  const found: Octave[] = [];
-  const first = points[0]!.fHz;
-  const count = Math.max(1, Math.ceil(Math.log2(points[points.length - 1]!.fHz / first) - 1e-9));
-  for (let k = 0; k < count; k++) {
-    const [from, to] = [first * 2 ** k, first * 2 ** (k + 1)];
-    const inside = points.filter(({ fHz }) => fHz >= from && (fHz < to || k === count - 1));
-    if (inside.length === 0) continue;
-    const ratio = Math.exp(median(inside.map(({ apart }) => apart)));
-    const before = found[found.length - 1];
-    const alike = before !== undefined && short(before.ratio) === short(ratio);
-    const agree = before !== undefined && Math.abs(Math.log(before.ratio)) < SAME && Math.abs(Math.log(ratio)) < SAME;
-    const toHz = Math.min(to, points[points.length - 1]!.fHz);
-    if (alike || agree) found[found.length - 1] = { ...before, toHz };
-    else found.push({ fromHz: from, toHz, ratio });
-  }
-  return found;
-}
-
-const MOST_OCTAVES = 8;
-
-function shapeOf(points: readonly Point[]): string {
-  const far = points.reduce((p, q) => (Math.abs(q.apart) > Math.abs(p.apart) ? q : p));
-  const above = far.apart > 0;
-  const ratio = Math.exp(Math.abs(far.apart));
-  const list = byOctave(points)
-    .slice(0, MOST_OCTAVES)
-    .map((o) => `${short(o.fromHz, 4)}–${short(o.toHz, 4)} Hz ${Math.abs(Math.log(o.ratio)) < SAME ? 'equal' : `×${short(o.ratio)}`}`);
-  return `lies up to ×${short(ratio)} ${above ? 'above' : 'below'} it, at ${short(far.fHz, 4)} Hz. Ratio of amplitude densities by octaves: ${list.join(', ')}`;
-}
-
-/** Does the writing on it name this curve: by its title, or by its id? Ids such as A1 stand for much else and count in brackets or after "curve" only. */
-function isNamed({ writing }: UploadedCurve, { id, title }: BuiltInCurve): boolean {
-  const plain = (text: string): string => text.toLowerCase().replace(/[^a-z0-9]+/g, ' ');
-  const marked = new RegExp(`(\\(|\\bcurve )${id}\\b`);
-  const alone = new RegExp(`(^|[\\s"'/])${id}([\\s"'.,;:/]|$)`);
-  return writing.some((line) => marked.test(line) || plain(line).includes(plain(title).trim()) || (/^[GS]/.test(id) && alone.test(line)));
-}
+import { shapeBeside } from '../noise/curve-shape';
 
 interface Relation {
   readonly says: string;
@@ -150,13 +16,8 @@ function relationTo(curve: UploadedCurve, known: BuiltInCurve, named: boolean): 
   const mistaken = densityMistaken(curve, known);
   if (mistaken !== null) return { says: mistaken, fix: 'Check the column of the noise in the sheet: asd, psd or characteristic.' };
   if (angular(curve, known)) return { says: 'is that curve with its frequencies multiplied by 2π: an angular frequency in the first column?', fix: 'Give frequencies in Hz.' };
-  const apart = octaves(points.filter((point) => Math.abs(point.apart) > APART));
-  const same = longestSame(points);
-  const close = points.length >= LEAST_POINTS && same >= LEAST_SAME && apart >= LEAST_APART;
-  const claimed = named && points.length > 1 && octaves(points) >= 1 && apart >= LEAST_APART;
-  if (!close && !claimed) return null;
-  const ends = same >= LEAST_APART ? 'One coefficient may be mistyped, or noise was added to it.' : 'It may be another version.';
-  return { says: `${shapeOf(points)}. ${ends}`, fix: `Correct the curve, name it otherwise, or say why it differs; the published curve is built in as ${known.id}.` };
+  const shape = shapeBeside(points, named);
+  return shape === null ? null : { says: shape, fix: `Correct the curve, name it otherwise, or say why it differs; the published curve is built in as ${known.id}.` };
 }
 
 /** V20: an uploaded curve beside the published ones that its name, or its own numbers, say it is. At most one question. */

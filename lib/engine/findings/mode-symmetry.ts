@@ -4,17 +4,21 @@ import { loudModes, peakOf } from './loud-modes';
 import { modeName, percent, short } from './spelt';
 
 /** V15: a residual of the mirror rule above this is said. */
-const RESIDUAL = 0.01;
+export const RESIDUAL = 0.01;
 /** Pairs quieter than this share of the loudest mode hold rounding. */
 const LOUD = 0.01;
 /** Another relation fits when it leaves so much less. */
 const FITS = 0.1;
 
-interface Broken {
+/** A pair (ℓ, ±m) beside the mirror rule. */
+export interface MirrorPair {
   readonly plus: Mode;
   readonly minus: Mode;
+  /** Relative distance from (−1)^ℓ H*. */
   readonly residual: number;
+  /** Fits H* with the other sign. */
   readonly signOnly: boolean;
+  /** Fits H itself, with either sign. */
   readonly plain: boolean;
 }
 
@@ -31,15 +35,25 @@ function distance(plus: Mode, minus: Mode, sign: number, conjugate: boolean): nu
   return whole > 0 ? Math.sqrt(apart / whole) : 0;
 }
 
-function brokenPair(plus: Mode, minus: Mode): Broken | null {
+function pairOf(plus: Mode, minus: Mode): MirrorPair {
   const sign = plus.l % 2 === 0 ? 1 : -1;
   const residual = distance(plus, minus, sign, true);
-  if (!(residual > RESIDUAL)) return null;
-  const fits = (s: number, conjugate: boolean): boolean => distance(plus, minus, s, conjugate) < FITS * residual;
+  const fits = (s: number, conjugate: boolean): boolean => residual > RESIDUAL && distance(plus, minus, s, conjugate) < FITS * residual;
   return { plus, minus, residual, signOnly: fits(-sign, true), plain: fits(sign, false) || fits(-sign, false) };
 }
 
-function guessOf({ plus, minus, signOnly, plain }: Broken): string {
+/** Every pair of which one is loud enough to tell. */
+export function mirrorPairs(modes: readonly Mode[]): readonly MirrorPair[] {
+  const loud = loudModes(modes, LOUD).map(({ mode }) => mode);
+  return modes
+    .filter(({ m }) => m > 0)
+    .flatMap((plus) => {
+      const minus = pick(modes, plus.l, -plus.m);
+      return minus && (loud.includes(plus) || loud.includes(minus)) ? [pairOf(plus, minus)] : [];
+    });
+}
+
+function guessOf({ plus, minus, signOnly, plain }: MirrorPair): string {
   if (signOnly) return ` It agrees once its sign is changed: a factor ${plus.l % 2 === 0 ? '−1 too many' : '(−1)^ℓ missing'}?`;
   if (plain) return ` It agrees with ${modeName(plus)} itself instead of its conjugate: was ${modeName(minus)} copied without H*?`;
   return ' A precessing or unequally resolved system may do that; a convention that differs between the modes does too.';
@@ -47,15 +61,8 @@ function guessOf({ plus, minus, signOnly, plain }: Broken): string {
 
 /** V15: given modes with m < 0 against the mirror of their partners. */
 export function mirrorFindings(modes: readonly Mode[], name: string): Finding[] {
-  const loud = loudModes(modes, LOUD).map(({ mode }) => mode);
-  const broken = modes
-    .filter(({ m }) => m > 0)
-    .flatMap((plus) => {
-      const minus = pick(modes, plus.l, -plus.m);
-      return minus && (loud.includes(plus) || loud.includes(minus)) ? [brokenPair(plus, minus)] : [];
-    })
-    .filter((pair) => pair !== null);
-  const worst = broken.reduce<Broken | null>((p, q) => (p === null || q.residual > p.residual ? q : p), null);
+  const broken = mirrorPairs(modes).filter(({ residual }) => residual > RESIDUAL);
+  const worst = broken.reduce<MirrorPair | null>((p, q) => (p === null || q.residual > p.residual ? q : p), null);
   if (worst === null) return [];
   const others = broken.filter((pair) => pair !== worst).map(({ minus }) => modeName(minus));
   const more = others.length === 0 ? '' : ` Others that differ: ${others.join(', ')}.`;

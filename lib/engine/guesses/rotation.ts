@@ -36,13 +36,16 @@ export function guessRotation({ name, domain, content }: Waveform): Guess | null
   const share = steps.filter((x) => x * median > 0).length / steps.length;
   if (share < LIKELY) return null;
   const agrees = median < 0;
+  // With both signs of m there, exchanged labels turn it round as well: the samples cannot tell which.
+  const both = !agrees && content.kind === 'modes' && content.modes.some(({ l, m }) => l === 2 && m === -2);
   return {
     about: 'rotation',
     convention: 'C22',
     declared: 'as declared, H₂₂ ∝ e^{−iφ}',
     proposed: agrees ? 'as declared, H₂₂ ∝ e^{−iφ}' : 'the other sense, H₂₂ ∝ e^{+iφ}',
+    value: agrees ? 'as-declared' : 'reversed',
     agrees,
-    confidence: share >= CLEAR ? 0.95 : 0.6,
-    reason: `Over the middle half of ${name} arg H₂₂ turns by ${short(median).replace('-', '−')} rad a sample (median; ${percent(share)} of the steps the same way), read as declared; a negative number is expected.`,
+    confidence: share >= CLEAR ? (both ? 0.8 : 0.95) : 0.6,
+    reason: `Over the middle half of ${name} arg H₂₂ turns by ${short(median).replace('-', '−')} rad a sample (median; ${percent(share)} of the steps the same way), read as declared; a negative number is expected.${both ? ' Labels m and −m that changed places (C23) would show the same.' : ''}`,
   };
 }

@@ -92,8 +92,8 @@ const SURE = 0.8;
 /** What the samples say against the declaration; the unit of time is no reading of one convention. */
 const shownBy = (waveform: Waveform): Shown[] =>
   guessWaveform(waveform)
-    .filter(({ agrees, confidence, about }) => !agrees && confidence >= SURE && about !== 'time-unit')
-    .map(({ about, convention, proposed, reason }) => ({ convention, option: about === 'variable' ? proposed : null, reason }));
+    .filter(({ agrees, confidence }) => !agrees && confidence >= SURE)
+    .flatMap(({ about, convention, proposed, reason }) => (convention === null ? [] : [{ convention, option: about === 'variable' ? proposed : null, reason }]));
 
 function noiseFacts(claim: Claim, { noise: curve }: QuantityInputs, sheet: ClaimSheet): NoiseFacts | null {
   const declared = claim.noise === null ? undefined : sheet.noise.get(claim.noise);

@@ -1,11 +1,14 @@
 import { describe, expect, it } from 'vitest';
-import type { Waveform } from '@/lib/engine/contract/waveform';
+import type { Mode, ModeSet, Waveform } from '@/lib/engine/contract/waveform';
 import type { Guess } from '@/lib/engine/guesses/guess';
 import { guessWaveform } from '@/lib/engine/guesses/guess-waveform';
+import type { SyntheticWaveform } from '@/lib/engine/synthesis/synthesise';
 import { MSUN_S } from '@/lib/engine/units/constants';
 import { binaryOf, changed, inM } from '../findings/finding-specimen';
 
-const house = (massRatio = 1) => binaryOf({ massRatio, mOmega0: 0.022 });
+/** Modes of m > 0; those of both signs have tests of their own below. */
+const oneSign = ({ t, modes }: Pick<SyntheticWaveform, 't' | 'modes'>) => ({ t, modes: modes.filter(({ m }) => m > 0) });
+const house = (massRatio = 1) => oneSign(binaryOf({ massRatio, mOmega0: 0.022 }));
 const known = (massRatio = 1) => ({ binary: { massRatio } });
 const contradictions = (waveform: Waveform): Guess[] => guessWaveform(waveform).filter(({ agrees }) => !agrees);
 const scaled = (by: number) => changed(house(), 2, 2, (re, im) => [by * re, by * im]);
@@ -57,13 +60,68 @@ describe('guesses from the samples of a waveform', () => {
     expect(brief(contradictions(inM(scaled(factor), known())))).toEqual([`normalisation: ${proposed}`]);
   });
 
-  it('are silent on amplitude and time without a mass ratio, and on all of it without (2,2)', () => {
-    expect(guessWaveform(inM(house())).map(({ about }) => about)).toEqual(['rotation']);
-    const { modes, t } = house();
+  it('are rougher without a mass ratio, and silent on all of it without (2,2)', () => {
+    const found = guessWaveform(inM(house()));
+    expect(found.map(({ about, agrees }) => `${about} ${agrees}`)).toEqual(['rotation true', 'time-unit true', 'variable true']);
+    expect(found.at(-1)?.confidence).toBe(0.75);
+    expect(brief(contradictions(inM(derived(house()))))).toEqual(['variable: news']);
+    const { modes, t } = binaryOf({ mOmega0: 0.022 });
     expect(guessWaveform(inM({ t, modes: modes.filter(({ m }) => m < 0) }, known()))).toEqual([]);
+  });
+
+  it('ask of seconds without a mass whether they are M', () => {
+    const bare = { ...known(), unit: 's', amplitudeUnit: 'strain' } as const;
+    expect(brief(contradictions(inM(house(), bare)))).toEqual(['time-unit: M']);
+    const physical = changed({ ...house(), t: house().t.map((x) => x * 60 * MSUN_S) }, 2, 2, (re, im) => [3e-21 * re, 3e-21 * im]);
+    const found = guessWaveform(inM(physical, bare));
+    expect(found.map(({ about, agrees }) => `${about} ${agrees}`)).toEqual(['rotation true', 'time-unit true']);
+    expect(found[1]!.reason).toMatch(/total mass of [56]\d(\.\d)? solar/);
+  });
+
+  it('tell a strain that has the distance in it', () => {
+    expect(brief(contradictions(inM(scaled(1e-20), known())))).toEqual(['normalisation: strain at a distance, not r h/M']);
   });
 
   it('are silent on an amplitude that nothing usual explains', () => {
     expect(brief(contradictions(inM(scaled(30), known())))).toEqual([]);
+  });
+});
+
+describe('guesses from both signs of m', () => {
+  const several = () => oneSign(binaryOf({ massRatio: 2, mOmega0: 0.022, modes: ['22', '33', '21'] }));
+  const minusOf = (by: (mode: Mode) => Mode) => {
+    const { t, modes } = several();
+    return inM({ t, modes: [...modes, ...modes.map(by)] }, known(2));
+  };
+  const conjugate = (mode: Mode, sign: number): Mode => ({ ...mode, m: -mode.m, re: mode.re.map((x) => sign * x), im: mode.im.map((x) => -sign * x) });
+  const mirror = (mode: Mode): Mode => conjugate(mode, mode.l % 2 === 0 ? 1 : -1);
+  const ofMinus = (waveform: Waveform) => guessWaveform(waveform).filter(({ about }) => about === 'negative-m');
+
+  it('agree with mirrors, and say nothing of a file that holds one sign', () => {
+    expect(ofMinus(minusOf(mirror))).toMatchObject([{ agrees: true, value: 'given', convention: 'C24' }]);
+    expect(ofMinus(inM(several()))).toEqual([]);
+  });
+
+  it('tell a mirror without (−1)^ℓ by the modes of odd ℓ', () => {
+    const [found] = ofMinus(minusOf((mode) => conjugate(mode, 1)));
+    expect(found).toMatchObject({ agrees: false, value: 'mirror', convention: 'C24' });
+    expect(found?.reason).toContain('(3,−3)');
+    expect(found?.reason).not.toContain('(2,−2)');
+  });
+
+  it('tell copies under the label −m', () => {
+    expect(ofMinus(minusOf((mode) => ({ ...mode, m: -mode.m })))).toMatchObject([{ agrees: false, value: 'mirror', convention: 'C23' }]);
+  });
+
+  it('are silent where no one relation fits', () => {
+    expect(ofMinus(minusOf((mode) => (mode.l === 3 ? { ...mode, m: -mode.m, re: mode.re.map((x) => 0.7 * x) } : mirror(mode))))).toEqual([]);
+  });
+
+  it('say of a reversed file with both signs that exchanged labels would look the same', () => {
+    const whole = minusOf(mirror);
+    const turned = { ...whole, content: { kind: 'modes' as const, modes: (whole.content as ModeSet).modes.map((mode) => ({ ...mode, im: mode.im.map((x) => -x) })) } };
+    const [rotation] = contradictions(turned);
+    expect(rotation).toMatchObject({ about: 'rotation', confidence: 0.8 });
+    expect(rotation?.reason).toContain('C23');
   });
 });
