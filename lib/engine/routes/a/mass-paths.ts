@@ -9,7 +9,7 @@ export interface MassPaths {
 }
 
 /** A time, a phase and a size that are taken out serve so many steps of the grid. */
-const STEPS_SERVED = 8;
+const STEPS_SERVED = 16;
 /** Sums over bins stand for integrals, and the band's edges lie between bins. */
 const ROOM = 1.002;
 /** Beyond a right angle nothing is bounded. */

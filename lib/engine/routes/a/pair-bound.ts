@@ -1,5 +1,6 @@
 import { powerOfTwoFrom, transformOfSize } from '@/lib/engine/fourier/transform';
 import type { MassSlice } from './mass-slice';
+import { newtonStep, pairProduct, type PairProduct } from './pair-product';
 import type { PackedSide } from './packed-side';
 
 /** Between what a pair's match at one mass lies, over all shifts and phases. */
@@ -8,10 +9,9 @@ export interface MatchBounds {
   readonly most: number;
 }
 
-/** Lags for each bin by which the power spreads: between them the modulus rises by a tenth at most. */
-const LAGS_PER_SPREAD = 5;
+/** Lags for each bin by which the power spreads: between them the modulus rises by a third at most. */
+const LAGS_PER_SPREAD = 4;
 const LEAST_LAGS = 64;
-const TURN = 2 * Math.PI;
 /** A Newton step shorter than this share of a lag leaves less than 1e-6 of the value. */
 const CLOSE = 0.015;
 const MOST_STEPS = 4;
@@ -46,123 +46,74 @@ function addRim(weights: Float64Array, power: Float64Array, shift: number, from:
   rim.sized += sized;
 }
 
-let product = new Float64Array(0);
-/** Σ V|b|² of the core and Σ V (k − middle)² |b|², found as the product is made. */
-const core = { inside: 0, spread: 0 };
-
-/** The product over n bins of the core from `from` on, interleaved in `product`. */
-function fillProduct({ first, re: ar, im: ai, weights, middle }: MassSlice, { first: own, re: br, im: bi }: PackedSide, from: number, n: number): void {
-  if (product.length < 2 * n) product = new Float64Array(4 * n);
-  const into = product;
-  const { values } = weights;
-  const i0 = from - first;
-  const j0 = from - own;
-  const w0 = from - weights.first;
-  let d = from - middle;
-  let inside = 0;
-  let spread = 0;
-  for (let k = 0; k < n; k++) {
-    const p = ar[i0 + k]!;
-    const q = ai[i0 + k]!;
-    const r = br[j0 + k]!;
-    const s = bi[j0 + k]!;
-    const v = values[w0 + k]! * (r * r + s * s);
-    into[2 * k] = p * r + q * s;
-    into[2 * k + 1] = q * r - p * s;
-    inside += v;
-    spread += d * d * v;
-    d++;
+/** Bins a whole turn apart at every lag add up. */
+function folded({ values, n }: PairProduct, size: number, data: Float64Array): Float64Array {
+  if (n <= size) return values;
+  for (let i = 0; i < 2 * size; i++) data[i] = values[i]!;
+  for (let from = 2 * size; from < 2 * n; from += 2 * size) {
+    const to = Math.min(2 * n, from + 2 * size);
+    for (let i = from; i < to; i++) data[i - from]! += values[i]!;
   }
-  core.inside = inside;
-  core.spread = spread;
+  return data;
 }
 
-/** The product at `size` lags, which may be fewer than the bins: those a whole turn apart add up. Gives |c|² times size². */
-function atLags(n: number, size: number): Float64Array {
+/** |c|² at `size` lags, which may be fewer than the bins, and the place of the highest. */
+function atLags(product: PairProduct, size: number): { readonly heights: Float64Array; readonly at: number } {
   const { data, out, heights } = scratchOf(size);
-  const values = product;
-  const head = 2 * Math.min(n, size);
-  for (let i = 0; i < head; i++) data[i] = values[i]!;
-  data.fill(0, head);
-  for (let i = 2 * size; i < 2 * n; i++) data[i & (2 * size - 1)]! += values[i]!;
-  transformOfSize(size).inverse(out, data);
-  const scale = size * size;
-  for (let i = 0; i < size; i++) {
-    const x = out[2 * i]!;
-    const y = out[2 * i + 1]!;
-    heights[i] = scale * (x * x + y * y);
-  }
-  return heights;
-}
-
-/** The height of |c|² that a Newton step from lag x promises, and the step, in cycles per bin. */
-function stepFrom(data: Float64Array, n: number, x: number): { readonly height: number; readonly step: number } {
-  const [stepRe, stepIm] = [Math.cos(TURN * x), Math.sin(TURN * x)];
-  let er = 1;
-  let ei = 0;
-  let zr = 0;
-  let zi = 0;
-  let dr = 0;
-  let di = 0;
-  let sr = 0;
-  let si = 0;
-  const middle = n >> 1;
-  for (let j = 0; j < n; j++) {
-    const a = data[2 * j]!;
-    const b = data[2 * j + 1]!;
-    const k = j - middle;
-    const u = a * er - b * ei;
-    const v = a * ei + b * er;
-    zr += u;
-    zi += v;
-    dr -= k * v;
-    di += k * u;
-    sr -= k * k * u;
-    si -= k * k * v;
-    const next = er * stepRe - ei * stepIm;
-    ei = er * stepIm + ei * stepRe;
-    er = next;
-  }
-  const height = zr * zr + zi * zi;
-  const slope = 2 * (zr * dr + zi * di);
-  const bend = 2 * (dr * dr + di * di + zr * sr + zi * si);
-  if (!(bend < 0)) return { height, step: 0 };
-  return { height: height - (slope * slope) / (2 * bend), step: -slope / bend / TURN };
-}
-
-/** The top of the hill of the highest lag, and the height that any other could reach unseen: both of |c|². */
-function topsOf(heights: Float64Array, n: number, unseen: number): { readonly top: number; readonly other: number } {
-  const size = heights.length;
+  transformOfSize(size).forward(out, folded(product, size, data));
   let at = 0;
   let most = -1;
   for (let i = 0; i < size; i++) {
-    if (heights[i]! > most) {
-      most = heights[i]!;
+    const x = out[2 * i]!;
+    const y = out[2 * i + 1]!;
+    const height = x * x + y * y;
+    heights[i] = height;
+    if (height > most) {
+      most = height;
       at = i;
     }
   }
-  const before = heights[(at + size - 1) % size]!;
-  const after = heights[(at + 1) % size]!;
-  const bend = before - 2 * most + after;
-  const lag = (at + (bend < 0 ? Math.max(-0.5, Math.min(0.5, (before - after) / (2 * bend))) : 0)) / size;
-  const hill = (): { readonly height: number; readonly step: number } => {
-    let at = lag;
-    for (let round = 1; ; round++) {
-      const found = stepFrom(product, n, at);
-      const lags = Math.abs(found.step) * size;
-      if (lags < CLOSE || !(lags < 1) || round === MOST_STEPS) return found;
-      at += found.step;
-    }
-  };
-  const found = hill();
-  const top = Math.max(most, Math.abs(found.step) * size < 1 ? found.height : 0);
-  // A lag that is not beside the highest one counts where it could hide more.
-  const least = Math.max(0, Math.sqrt(top) - unseen) ** 2;
-  let other = 0;
-  for (let i = 0; i < size; i++) {
-    if (heights[i]! > least && heights[i]! > other && Math.min((i - at + size) % size, (at - i + size) % size) > 1) other = heights[i]!;
+  return { heights, at };
+}
+
+/** Where a bell through three neighbours is highest, from the middle one: spectra of one hump make such hills. */
+function summitBeside(before: number, most: number, after: number): number {
+  const [low, high] = [Math.log(before / most), Math.log(after / most)];
+  const bend = low + high;
+  return bend < 0 && Number.isFinite(bend) ? Math.max(-0.5, Math.min(0.5, (low - high) / (2 * bend))) : 0;
+}
+
+/** The top of the hill beside the highest lag, of |c|². */
+function climbed(product: PairProduct, heights: Float64Array, at: number): number {
+  const size = heights.length;
+  const most = heights[at]!;
+  let lag = (at + summitBeside(heights[at > 0 ? at - 1 : size - 1]!, most, heights[at + 1 < size ? at + 1 : 0]!)) / size;
+  for (let round = 1; ; round++) {
+    const { height, step } = newtonStep(product, lag);
+    const lags = Math.abs(step) * size;
+    if (!(lags < 1)) return most;
+    if (lags < CLOSE || round === MOST_STEPS) return Math.max(most, height);
+    lag += step;
   }
-  return { top, other };
+}
+
+/** The highest lag not beside place `at` that is higher than `least`; 0 where there is none. */
+function otherAbove(heights: Float64Array, at: number, least: number): number {
+  const size = heights.length;
+  let other = least;
+  for (let i = 0; i < size; i++) {
+    if (heights[i]! > other && Math.min((i - at + size) % size, (at - i + size) % size) > 1) other = heights[i]!;
+  }
+  return other > least ? other : 0;
+}
+
+/** The top of the highest hill, and how high |c| may be at any lag. */
+function topsOf(product: PairProduct, size: number, unseen: number): { readonly top: number; readonly highest: number } {
+  const { heights, at } = atLags(product, size);
+  const top = Math.sqrt(climbed(product, heights, at));
+  // A lag that is not beside the highest one counts where it could hide more.
+  const other = otherAbove(heights, at, Math.max(0, top - unseen) ** 2);
+  return { top, highest: other === 0 ? top : Math.max(top, Math.sqrt(other) + unseen) };
 }
 
 /**
@@ -180,23 +131,22 @@ export function matchBounds(slice: MassSlice, template: PackedSide): MatchBounds
   const high = Math.min(first + values.length, template.first + template.re.length);
   const from = Math.min(Math.max(slice.coreFrom, low), high);
   const n = Math.max(0, Math.min(slice.coreTo, high) - from);
-  fillProduct(slice, template, from, n);
+  const mostLags = powerOfTwoFrom(2 * n);
+  const product = pairProduct(slice, template, from, n, mostLags);
   const shift = template.first - first;
   rim.signed = 0;
   rim.sized = 0;
   addRim(values, template.power, shift, low - first, from - first);
   addRim(values, template.power, shift, from + n - first, high - first);
-  const { inside, spread } = core;
-  const norm = inside + rim.signed;
+  const norm = product.inside + rim.signed;
   const norms = Math.sqrt(slice.norm * norm);
   if (!(norms > 0)) return { least: 0, most: 0 };
   const rest = Math.sqrt(slice.outside * rim.sized) / norms + ROOM;
   if (n === 0) return { least: 0, most: Math.min(1, rest) };
-  const width = Math.sqrt(Math.max(slice.spread / slice.norm, spread / norm));
-  const size = Math.min(powerOfTwoFrom(2 * n), powerOfTwoFrom(Math.max(LEAST_LAGS, LAGS_PER_SPREAD * width)));
+  const width = Math.sqrt(Math.max(slice.spread / slice.norm, product.spread / norm));
+  const size = Math.min(mostLags, powerOfTwoFrom(Math.max(LEAST_LAGS, LAGS_PER_SPREAD * width)));
   const half = Math.PI / size;
-  const unseen = (half * half * Math.sqrt(slice.spread * spread)) / 2;
-  const { top, other } = topsOf(atLags(n, size), n, unseen);
-  const highest = other === 0 ? Math.sqrt(top) : Math.max(Math.sqrt(top), Math.sqrt(other) + unseen);
-  return { least: Math.max(0, Math.sqrt(top) / norms - rest), most: Math.min(1, highest / norms + rest) };
+  const unseen = (half * half * Math.sqrt(slice.spread * product.spread)) / 2;
+  const { top, highest } = topsOf(product, size, unseen);
+  return { least: Math.max(0, top / norms - rest), most: Math.min(1, highest / norms + rest) };
 }

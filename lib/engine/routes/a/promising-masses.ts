@@ -16,24 +16,26 @@ interface Gap {
   readonly b: number;
   /** No mass in the gap makes a smaller angle. */
   readonly angle: number;
-  /** The grid point inside it where the least is most likely; −1 when all were looked at. */
-  readonly next: number;
 }
+
+const lengthOf = (path: Float64Array, left: number, right: number): number => path[Math.min(path.length - 1, right)]! - path[Math.max(0, left)]!;
 
 /** By the triangle inequality: an angle changes along the path by no more than the path is long. */
 function gapOf(template: number, path: Float64Array, left: number, right: number, a: number, b: number): Gap {
-  const last = path.length - 1;
-  const length = path[Math.min(last, right)]! - path[Math.max(0, left)]!;
-  const angle = left < 0 ? b - length : right > last ? a - length : (a + b - length) / 2;
-  const wanted = left < 0 ? 0 : right > last ? length : (a - b + length) / 2;
-  return { template, left, right, a, b, angle, next: right - left < 2 ? -1 : nextIn(path, left, right, wanted) };
+  const length = lengthOf(path, left, right);
+  const angle = left < 0 ? b - length : right >= path.length ? a - length : (a + b - length) / 2;
+  return { template, left, right, a, b, angle };
 }
 
-/** The grid point strictly between two whose path from the left one is nearest to the one wanted. */
-function nextIn(path: Float64Array, left: number, right: number, wanted: number): number {
-  const from = path[Math.max(0, left)]!;
+/** The grid point in the middle of the stretch that the looks at both ends leave open for angles below `least`; −1 when all were looked at. */
+function nextIn(path: Float64Array, { left, right, a, b }: Gap, least: number): number {
+  if (right - left < 2) return -1;
+  const length = lengthOf(path, left, right);
+  const from = left < 0 ? 0 : Math.max(0, a - least);
+  const to = right >= path.length ? length : Math.min(length, length - (b - least));
+  const wanted = path[Math.max(0, left)]! + (from + to) / 2;
   let best = left + 1;
-  for (let g = left + 2; g < right; g++) if (Math.abs(path[g]! - from - wanted) < Math.abs(path[best]! - from - wanted)) best = g;
+  for (let g = left + 2; g < right; g++) if (Math.abs(path[g]! - wanted) < Math.abs(path[best]! - wanted)) best = g;
   return best;
 }
 
@@ -99,7 +101,8 @@ export function promising(paths: readonly Float64Array[], look: (template: numbe
   };
   paths.forEach((_, t) => { split(t, factors >> 1, -1, factors, Infinity, Infinity); });
   for (let gap = heap.pop(); gap !== undefined && !(gap.angle > angleOf(best - ROOM)); gap = heap.pop()) {
-    const { template: t, left, right, a, b, next } = gap;
+    const { template: t, left, right, a, b } = gap;
+    const next = nextIn(paths[t]!, gap, angleOf(best - ROOM));
     if (next >= 0) split(t, next, left, right, a, b);
     else for (const g of [left, right]) if (g >= 0 && g < factors) live[t * factors + g] = seen[t * factors + g]!;
   }
