@@ -66,10 +66,10 @@ async function person(name: string, role: AccountRole = 'member'): Promise<Signe
 export const computeHere: ComputeSheet = (job, watch) => compute({ ...job, explain: false }, watch);
 
 /** With the search for other readings, which takes its time. */
-const compute: ComputeSheet = async ({ sheet, files, withFigures, explain }, { onProgress, signal }) => {
+const compute: ComputeSheet = async ({ sheet, files, withFigures, explain, otherwise }, { onProgress, signal }) => {
   const pathOf = new Map(files.map((f) => [f.name, f.path]));
   const openFile = (name: string) => createReadStream(pathOf.get(name) ?? '/nowhere') as AsyncIterable<Uint8Array>;
-  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256, ...(explain && { explain: { endedBy: () => null } }) });
+  const done = await reproduce({ sheetJson: sheet, openFile }, { withFigures, onProgress, cancelled: () => signal.aborted, digest: streamingSha256, ...(otherwise && { otherwise }), ...(explain && { explain: { endedBy: () => null } }) });
   return done.ok ? ok(done.value) : done;
 };
 

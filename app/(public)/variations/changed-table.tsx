@@ -1,9 +1,13 @@
+import type { Route } from 'next';
+import Link from 'next/link';
 import { SettingStanding } from '@/app/_ui/claim/setting-table';
 import { formatSetting, settingLabel } from '@/app/_ui/claim/setting-names';
 import { Table } from '@/app/_ui/primitives/table';
+import { conventionHref } from '@/app/_ui/claim/convention-words';
+import type { ConventionId } from '@/lib/explain/conventions/convention';
 import type { UsedSetting } from '@/lib/engine/contract/measurement';
 import type { VariationChanges } from '@/lib/services/variations/variation-view';
-import { noiseInWords } from './variation-words';
+import { maskInWords, noiseInWords } from './variation-words';
 
 interface ChangedTableProps {
   readonly claimId: string;
@@ -20,10 +24,22 @@ function Used({ setting, none }: { readonly setting: UsedSetting | undefined; re
   return <>{setting.standing === 'swept' ? 'as each place says' : formatSetting(setting.name, setting.value, setting.unit)} <SettingStanding standing={setting.standing} /></>;
 }
 
+const conventionOf = (readingId: string): ConventionId => readingId.split(':')[0] as ConventionId;
+
+function ReadingRow({ id, clause }: NonNullable<VariationChanges['readings']>[number]) {
+  return (
+    <tr>
+      <th scope="row" className="font-normal!">Reading of <Link href={conventionHref(conventionOf(id)) as Route} className="inline-flex min-h-8 items-center">{conventionOf(id)}</Link></th>
+      <td>as declared</td>
+      <td><strong>as if {clause}</strong></td>
+    </tr>
+  );
+}
+
 /** Each changed setting as it stands in the claim and as it was varied. */
 export function ChangedTable({ claimId, changes, official, varied }: ChangedTableProps) {
   return (
-    <Table caption={`Settings of ${claimId} that were changed`}>
+    <Table caption={`What was changed of ${claimId}`}>
       <thead><tr><th scope="col">Setting</th><th scope="col">In the claim</th><th scope="col">Varied</th></tr></thead>
       <tbody>
         {Object.entries(changes.settings ?? {}).map(([name, value]) => (
@@ -34,6 +50,8 @@ export function ChangedTable({ claimId, changes, official, varied }: ChangedTabl
           </tr>
         ))}
         {changes.noise && <tr><th scope="row" className="font-normal!">{settingLabel('noise')}</th><td><Used setting={named(official, 'noise')} none="the claim’s own" /></td><td><strong>{noiseInWords(changes.noise)}</strong></td></tr>}
+        {changes.readings?.map((reading) => <ReadingRow key={reading.id} {...reading} />)}
+        {changes.mask && <tr><th scope="row" className="font-normal!">Stretch of time</th><td>all of each record</td><td><strong>{maskInWords(changes.mask)}</strong>, set to zero with edges of a tenth of it</td></tr>}
       </tbody>
     </Table>
   );

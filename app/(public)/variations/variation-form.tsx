@@ -15,7 +15,11 @@ import { requestVariation } from './actions';
 import type { AskedVariation } from './asked-variation';
 import { atOnce } from './at-once';
 import { changesFrom, fieldsFrom, isUnchanged, type VariationFields } from './variation-fields';
+import { AnotherReading, ChosenReadings, MaskFields, type PartProps } from './variation-readings';
 import type { VariationSource } from './variation-source';
+
+/** Places of a sweep that are told at once. */
+const SHOWN_AT_ONCE = 6;
 
 interface FormProps {
   readonly source: VariationSource;
@@ -33,9 +37,12 @@ export function VariationForm({ source, asked }: FormProps) {
     <form className="grid gap-3" aria-label={`Variation of ${source.claimId}`} onSubmit={(e) => { e.preventDefault(); if (!isUnchanged(changes)) submit(); }}>
       <Trouble trouble={asked && asked.trouble.length > 0 ? asked.trouble : null} />
       <ChosenSettings source={source} fields={fields} onFields={setFields} />
+      <ChosenReadings source={source} fields={fields} onFields={setFields} />
       <div className="grid gap-3 sm:grid-cols-2">
         <AnotherSetting source={source} fields={fields} onFields={setFields} />
+        <AnotherReading source={source} fields={fields} onFields={setFields} />
         {source.noise && <CurveChoice noise={source.noise} value={fields.noise} onValue={(noise) => setFields({ ...fields, noise })} />}
+        <MaskFields source={source} fields={fields} onFields={setFields} />
       </div>
       <TextareaField label="Note" rows={2} maxLength={2000} value={fields.note} onChange={(e) => setFields({ ...fields, note: e.target.value })} hint="Why you tried it. Whoever sees the variation reads it." />
       <AtOnceLine source={source} changes={changes} />
@@ -47,12 +54,6 @@ export function VariationForm({ source, asked }: FormProps) {
       <Trouble trouble={trouble} />
     </form>
   );
-}
-
-interface PartProps {
-  readonly source: VariationSource;
-  readonly fields: VariationFields;
-  readonly onFields: (fields: VariationFields) => void;
 }
 
 const without = (settings: VariationFields['settings'], name: string): VariationFields['settings'] => Object.fromEntries(Object.entries(settings).filter(([other]) => other !== name));
@@ -111,13 +112,15 @@ function CurveChoice({ noise, value, onValue }: { readonly noise: NonNullable<Va
 
 /** Where the change is a factor, the number is there while one types; the rerun follows when it is asked for. */
 function AtOnceLine({ source, changes }: { readonly source: VariationSource; readonly changes: ReturnType<typeof changesFrom> }) {
-  const known = atOnce({ quantity: source.quantity.id, settings: source.settings, points: source.points }, changes);
+  const known = atOnce({ ...source, quantity: source.quantity.id }, changes);
+  const more = source.points.length - SHOWN_AT_ONCE;
   return (
     <div role="status" className="text-ui">
       {known && (
         <div className="rounded border border-hair-2 bg-sheet px-3 py-2">
-          <p><strong>At once</strong>, by the factor {formatNumber(known.factor, { significant: 6 })} on the official number; nothing was rerun:</p>
-          <ul>{known.points.slice(0, 6).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.official, source.points[i]?.expandedUncertainty ?? null, source.unit)} → {formatWithUncertainty(p.value, p.expandedUncertainty, source.unit)}</li>)}</ul>
+          <p><strong>At once</strong>, by {known.factor === null ? 'a factor at each place' : `the factor ${formatNumber(known.factor, { significant: 6 })}`} on the {source.isDraft ? 'checked' : 'official'} number; nothing was rerun:</p>
+          <ul>{known.points.slice(0, SHOWN_AT_ONCE).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.official, source.points[i]?.expandedUncertainty ?? null, source.unit)} → {formatWithUncertainty(p.value, p.expandedUncertainty, source.unit)}</li>)}</ul>
+          {more > 0 && <p className="text-small text-ink-2">and at {more} more {more === 1 ? 'place' : 'places'}</p>}
         </div>
       )}
     </div>

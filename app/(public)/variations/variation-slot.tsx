@@ -17,7 +17,7 @@ interface SlotProps {
 export const variationSlot = ({ revision, result, variations, asked }: SlotProps) =>
   function action(claimId: string): ReactNode {
     const claim = result?.claims.find((c) => c.id === claimId);
-    const source = claim && variations ? variationSource(revision, claim) : undefined;
+    const source = claim && variations ? variationSource(revision, claim, variations.readings[claimId]) : undefined;
     if (!source || !variations) return null;
     const filled = asked?.claimId === claimId ? asked : null;
     // A link on the page itself asks for another filling: the form begins anew with it.

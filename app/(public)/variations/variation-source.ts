@@ -2,6 +2,9 @@ import { catalogueRows } from '@/app/(desk)/compose/[id]/catalogue-rows';
 import type { QuantityRow } from '@/app/(desk)/compose/[id]/quantity-row';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import type { UsedSetting } from '@/lib/engine/contract/measurement';
+import type { BinaryFacts } from '@/lib/engine/contract/waveform';
+import { conventionById } from '@/lib/explain/conventions/conventions';
+import type { OfferedReading } from '@/lib/explain/read-otherwise';
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 
@@ -9,6 +12,8 @@ import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 export interface VariationSource {
   readonly submissionId: string;
   readonly revision: number;
+  /** Nothing of it is lodged: the number that stands is that of a check. */
+  readonly isDraft: boolean;
   readonly claimId: string;
   readonly quantity: QuantityRow;
   readonly declared: Readonly<Record<string, unknown>>;
@@ -19,6 +24,15 @@ export interface VariationSource {
   readonly unit: string;
   readonly settings: readonly UsedSetting[];
   readonly points: readonly Pick<ResultPoint, 'at' | 'value' | 'expandedUncertainty' | 'tolerance'>[];
+  /** Facts beside the file of the waveform that the number is of. */
+  readonly binary: BinaryFacts;
+  /** How the catalogue of conventions could be read otherwise here; empty where the base run does not say. */
+  readonly readings: readonly SourceReading[];
+}
+
+export interface SourceReading extends OfferedReading {
+  /** Of the convention. */
+  readonly title: string;
 }
 
 type Loose = Readonly<Record<string, unknown>>;
@@ -27,11 +41,17 @@ const loose = (value: unknown): Loose => (typeof value === 'object' && value !==
 interface Revision {
   readonly submissionId: string;
   readonly revision: number;
-  readonly sheet: Pick<DraftSheet, 'claims' | 'noise'>;
+  readonly isDraft?: boolean;
+  readonly sheet: Pick<DraftSheet, 'claims' | 'noise' | 'waveforms'>;
+}
+
+function binaryOf(claim: Loose, { waveforms }: Revision['sheet']): BinaryFacts {
+  const name = loose(claim['of'])['a'];
+  return typeof name === 'string' ? loose(loose(waveforms[name])['binary']) : {};
 }
 
 /** Undefined where the sheet holds no such claim. */
-export function variationSource({ submissionId, revision, sheet }: Revision, result: ResultClaim): VariationSource | undefined {
+export function variationSource({ submissionId, revision, isDraft = false, sheet }: Revision, result: ResultClaim, readings: readonly OfferedReading[] = []): VariationSource | undefined {
   const claim = sheet.claims.find((c) => c['id'] === result.id);
   const quantity = catalogueRows().find(({ id }) => id === result.quantity);
   if (!claim || !quantity) return undefined;
@@ -40,6 +60,7 @@ export function variationSource({ submissionId, revision, sheet }: Revision, res
   return {
     submissionId,
     revision,
+    isDraft,
     claimId: result.id,
     quantity,
     declared: loose(claim['settings']),
@@ -48,5 +69,7 @@ export function variationSource({ submissionId, revision, sheet }: Revision, res
     unit: result.unit,
     settings: result.settings,
     points: result.points.map(({ at, value, expandedUncertainty, tolerance }) => ({ at, value, expandedUncertainty, tolerance })),
+    binary: binaryOf(claim, sheet),
+    readings: readings.map((reading) => ({ ...reading, title: conventionById(reading.convention).title })),
   };
 }

@@ -1,11 +1,14 @@
 import { formatSetting, settingLabel } from '@/app/_ui/claim/setting-names';
+import { formatNumber } from '@/app/_ui/math/format-number';
 import type { VariationChanges, VariationVisibility } from '@/lib/services/variations/variation-view';
 
-/** Only what was changed, as a reader would say it: `lower cut-off 30 Hz, noise curve G2`. */
-export function changesInWords({ settings = {}, noise }: VariationChanges): string {
+/** Only what was changed, as a reader would say it: `lower cut-off 30 Hz, noise curve G2, as if the series is taken for ψ₄`. */
+export function changesInWords({ settings = {}, noise, readings = [], mask }: VariationChanges): string {
   const words = Object.entries(settings).map(([name, value]) => `${settingLabel(name).replace(/^[A-Z](?=[a-z])/, (c) => c.toLowerCase())} ${value === null ? 'not declared' : formatSetting(name, value)}`);
-  return [...words, ...(noise === undefined ? [] : [`noise curve ${noiseInWords(noise)}`])].join(', ');
+  return [...words, ...(noise === undefined ? [] : [`noise curve ${noiseInWords(noise)}`]), ...readings.map(({ clause }) => `as if ${clause}`), ...(mask ? [maskInWords(mask)] : [])].join(', ');
 }
+
+export const maskInWords = ({ from, to }: NonNullable<VariationChanges['mask']>): string => `without ${formatNumber(from)} to ${formatNumber(to)} of the files’ time`;
 
 export const noiseInWords = (noise: NonNullable<VariationChanges['noise']>): string => ('curve' in noise ? `${noise.curve}, built in` : `${noise.named}, from the sheet`);
 

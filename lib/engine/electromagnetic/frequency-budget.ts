@@ -30,7 +30,7 @@ function slopeLines(point: FrequencyPoint, { omega, timeM }: FrequencyReading, h
  */
 export function frequencyComputation(point: FrequencyPoint, reading: FrequencyReading): BudgetLine[] {
   const hz = hzPerOmega(point.totalMassMsun);
-  return reading.window === null ? slopeLines(point, reading, hz) : ringdownComputation(point.ringdown, reading.window, hz * reading.omega, ({ omega }) => hz * Math.abs(omega));
+  return reading.window === null ? slopeLines(point, reading, hz) : ringdownComputation({ ...point.ringdown, scale: hz }, reading.window, hz * reading.omega, ({ omega }) => hz * Math.abs(omega));
 }
 
 /** Lines that are listed and decide coverage, never U. */

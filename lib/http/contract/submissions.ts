@@ -9,7 +9,7 @@ import { fileSchema, submissionLineSchema, submissionSchema, uploadSchema } from
 import { draftPatch } from '@/lib/services/submissions/update-draft';
 import { variationInput } from '@/lib/services/variations/request-variation';
 import { linkInput } from '@/lib/services/variations/open-by-link';
-import { variationPageSchema, variationSchema } from '@/lib/services/variations/variation-schema';
+import { offeredReadingSchema, variationPageSchema, variationSchema } from '@/lib/services/variations/variation-schema';
 import { VARIATION_VISIBILITIES } from '@/lib/services/variations/variation-view';
 import { operation } from '../operation';
 
@@ -71,8 +71,8 @@ export const watchRuns = operation({ door: 'GET /api/v1/submissions/{id}/events'
 
 export const stopRun = operation({ door: 'POST /api/v1/submissions/{id}/runs/{runId}/stop', summary: 'Your own check or variation is wanted no longer: before there is a number nothing is kept of it; a search for other readings ends with what it has. An official run is not stopped.', params: z.strictObject({ id: uuid, runId: uuid }), status: 202, answer: nothing });
 
-export const listVariations = operation({ door: 'GET /api/v1/submissions/{id}/variations', summary: 'Your reruns with other settings, and how many more you may ask for now.', params: idParam, query: page, answer: pageSchema(variationSchema).extend({ left: z.int() }) });
-export const askVariation = operation({ door: 'POST /api/v1/submissions/{id}/variations', summary: 'Asks for a rerun of one claim with other settings, of a lodged revision or of your own draft; it changes no official number.', params: idParam, body: variationInput, status: 202, answer: z.object({ variationId: uuid, runId: uuid }) });
+export const listVariations = operation({ door: 'GET /api/v1/submissions/{id}/variations', summary: 'Your reruns with other settings, how many more you may ask for now, and for a claim that is named how it may be read otherwise.', params: idParam, query: page.extend({ claimId: z.string().max(64).optional().describe('Also gives the readings of this claim, of the newest lodged revision, else of your draft.') }), answer: pageSchema(variationSchema).extend({ left: z.int(), readings: z.array(offeredReadingSchema) }) });
+export const askVariation = operation({ door: 'POST /api/v1/submissions/{id}/variations', summary: 'Asks for a rerun of one claim with other settings, other readings of its inputs or a mask, of a lodged revision or of your own draft; it changes no official number.', params: idParam, body: variationInput, status: 202, answer: z.object({ variationId: uuid, runId: uuid }) });
 
 const variationParam = z.strictObject({ id: uuid, variationId: uuid });
 export const readVariation = operation({ door: 'GET /api/v1/submissions/{id}/variations/{variationId}', summary: 'One variation beside the number it varies: your own, one attached to a comment that you may read, or one that its owner opened by its link.', params: variationParam, answer: variationPageSchema });

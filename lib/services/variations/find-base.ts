@@ -1,4 +1,4 @@
-import type { Transaction } from '@/db/client';
+import type { Reader } from '@/db/client';
 import { findLatestRun, type RunRow } from '@/db/reads/runs/run';
 import { findLatestLodged, findRevision, listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import { getSubmissionHead } from '@/db/reads/submissions/submission-head';
@@ -18,7 +18,7 @@ export interface Base {
  * The revision asked for, else the newest lodged one, else the authors' draft. A draft is its authors'
  * alone, and stands beside its latest check: with another sheet meanwhile, two things would differ.
  */
-export async function findBase(tx: Transaction, facts: SubmissionFacts, revision: number | undefined): Promise<Outcome<Base>> {
+export async function findBase(tx: Reader, facts: SubmissionFacts, revision: number | undefined): Promise<Outcome<Base>> {
   const row = await revisionOf(tx, facts, revision);
   if (!row || (row.lodgedAt === null && facts.authorship === null)) return { ok: false, error: NOT_FOUND };
   const run = await findLatestRun(tx, row.id, row.lodgedAt === null ? 'check' : 'official');
@@ -28,7 +28,7 @@ export async function findBase(tx: Transaction, facts: SubmissionFacts, revision
   return ok({ row, run });
 }
 
-async function revisionOf(tx: Transaction, facts: SubmissionFacts, revision: number | undefined): Promise<RevisionRow | undefined> {
+async function revisionOf(tx: Reader, facts: SubmissionFacts, revision: number | undefined): Promise<RevisionRow | undefined> {
   if (revision !== undefined) return findRevision(tx, facts.submissionId, revision);
   const lodged = await findLatestLodged(tx, facts.submissionId);
   return lodged ?? findRevision(tx, facts.submissionId, (await getSubmissionHead(tx, facts.submissionId)).currentRevision);

@@ -1,10 +1,12 @@
 import { z } from 'zod';
 import type { Transaction } from '@/db/client';
+import { findReadings } from '@/db/reads/runs/run';
 import { listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import { countVariations } from '@/db/reads/variations/variations';
 import { requestRun } from '@/db/writes/runs/request-run';
 import { recordVariation } from '@/db/writes/variations/record-variation';
 import { ENGINE_VERSION } from '@/lib/engine/version';
+import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
 import { webEnv } from '@/lib/env';
 import { enqueue } from '@/lib/jobs/enqueue';
 import { ok } from '@/lib/kernel/result';
@@ -19,6 +21,7 @@ import { personalQueue } from '@/lib/services/submissions/run-draft';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 import { changesInput } from './changes';
 import { findBase } from './find-base';
+import { otherwiseOf, readingsOf } from './read-otherwise';
 import { readable, varySheet } from './vary-sheet';
 
 export const variationInput = z.strictObject({
@@ -46,8 +49,12 @@ export function requestVariation(actor: Actor, submissionId: string, input: z.ou
     const varied = varySheet(declared, input.claimId, input.changes);
     const sheet = varied.ok ? readable(varied.value, input.changes, declared) : varied;
     if (!sheet.ok) return sheet;
-    const runId = await askRun(tx, grant, row, sheet.value);
-    const variationId = await recordVariation(tx, grant, { runId, revisionId: row.id, baseRunId: run.id, claimId: input.claimId, changes: input.changes, note: input.note.trim() });
+    const read = readingsOf(input.changes, (await findReadings(tx, run.id))[input.claimId] ?? []);
+    if (!read.ok) return read;
+    const { readings: _ids, ...changes } = input.changes;
+    const kept = { ...changes, ...(read.value.length > 0 && { readings: read.value }) };
+    const runId = await askRun(tx, grant, row, { sheet: sheet.value, ...otherwiseOf(kept) });
+    const variationId = await recordVariation(tx, grant, { runId, revisionId: row.id, baseRunId: run.id, claimId: input.claimId, changes: kept, note: input.note.trim() });
     note({ variationId });
     return ok({ variationId, runId });
   });
@@ -60,7 +67,12 @@ async function quotaSpent(tx: Transaction, actor: Actor, facts: SubmissionFacts)
   return counts.lately >= quota ? fail('limit', `${quota} variations were asked for here within a day. Try again tomorrow.`) : null;
 }
 
-async function askRun(tx: Transaction, grant: SubmissionGrant<'submission.vary'>, row: RevisionRow, sheet: DraftSheet): Promise<string> {
+interface Asked {
+  readonly sheet: DraftSheet;
+  readonly otherwise?: ReadOtherwise;
+}
+
+async function askRun(tx: Transaction, grant: SubmissionGrant<'submission.vary'>, row: RevisionRow, { sheet, otherwise }: Asked): Promise<string> {
   const files = await listRevisionFiles(tx, row.id);
   const runId = await requestRun(tx, grant, {
     revisionId: row.id,
@@ -68,7 +80,8 @@ async function askRun(tx: Transaction, grant: SubmissionGrant<'submission.vary'>
     engine: ENGINE_VERSION,
     sheet,
     inputs: files.map(({ name, sha256, bytes, storageKey }) => ({ name, sha256, bytes, storageKey })),
-    inputsDigest: inputsDigest(sheet as unknown as Record<string, unknown>, files),
+    inputsDigest: inputsDigest({ ...(sheet as unknown as Record<string, unknown>), ...(otherwise && { otherwise }) }, files),
+    ...(otherwise && { otherwise }),
   });
   await enqueue(tx, 'run-submission', { runId }, { key: `run:${runId}`, queue: personalQueue(userIdOf(grant.actor) ?? '', webEnv().AUTH_SECRET) });
   return runId;

@@ -20,6 +20,17 @@ export const variationSchema = z
   .object({ ...head, requestedAt: z.string(), run: runSchema })
   .meta({ id: 'Variation', description: 'A rerun with other settings, as the one who asked for it sees it. Never official.' });
 
+/** `OfferedReading` as a schema. */
+export const offeredReadingSchema = z
+  .object({
+    id: z.string(),
+    convention: z.string(),
+    clause: z.string().describe('To stand after “as if”.'),
+    says: z.object({ settings: z.record(z.string(), z.unknown()).optional(), noise: z.string().optional() }).nullable().describe('Settings, or a built-in curve, that say the same.'),
+    factor: z.union([z.number(), z.array(z.number())]).nullable().describe('On the number, where it is one; a list has one a point.'),
+  })
+  .meta({ id: 'OfferedReading', description: 'One way in which a convention of a claim could be read otherwise.' });
+
 const variedRun = z.discriminatedUnion('state', [
   z.object({ state: z.enum(['queued', 'running']), fraction: z.number(), doing: z.string() }),
   z.object({ state: z.literal('stopped'), because: z.string() }),

@@ -1,5 +1,6 @@
 import type { VariationChanges } from '@/db/schema/variations';
 import type { Problem } from '@/lib/kernel/problem';
+import type { ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import type { RunView } from '@/lib/services/submissions/submission-view';
 
@@ -31,6 +32,8 @@ export interface VariationList {
   readonly variations: readonly VariationView[];
   /** How many more may be asked for now. */
   readonly left: number;
+  /** How each claim may be read otherwise, as the base run offers it. */
+  readonly readings: ReadingsByClaim;
 }
 
 /** How its computation stands, without the moments that could tell who asked. */

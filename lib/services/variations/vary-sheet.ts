@@ -6,6 +6,8 @@ import { catalogue } from '@/lib/pipeline/catalogue';
 import { fail, type Outcome } from '@/lib/services/app-error';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 
+/** Readings and masks stand beside a sheet; it cannot say them. */
+type SheetChanges = Pick<VariationChanges, 'settings' | 'noise'>;
 type Claim = Readonly<Record<string, unknown>>;
 const record = (value: unknown): Record<string, unknown> => (typeof value === 'object' && value !== null && !Array.isArray(value) ? { ...(value as object) } : {});
 
@@ -20,7 +22,7 @@ function freeName(taken: DraftSheet['noise']): string {
  * The sheet of one claim with the changes put in. Everything that is not changed stays as the author
  * declared it, defaults included.
  */
-export function varySheet(sheet: DraftSheet, claimId: string, changes: VariationChanges): Outcome<DraftSheet> {
+export function varySheet(sheet: DraftSheet, claimId: string, changes: SheetChanges): Outcome<DraftSheet> {
   const claim = sheet.claims.find((c) => c['id'] === claimId);
   if (!claim) return fail('invalid', `The sheet has no claim ${claimId}; it has ${sheet.claims.map((c) => String(c['id'])).join(', ')}.`);
   const noise = changedNoise(sheet, changes);
@@ -31,14 +33,14 @@ export function varySheet(sheet: DraftSheet, claimId: string, changes: Variation
 }
 
 /** The varied sheet, if it can be read as one; else every problem, at the place in the changes that made it or in the sheet. */
-export function readable(varied: DraftSheet, changes: VariationChanges, sheet: DraftSheet): Outcome<DraftSheet> {
+export function readable(varied: DraftSheet, changes: SheetChanges, sheet: DraftSheet): Outcome<DraftSheet> {
   const parsed = parseClaimSheet(varied as unknown, catalogue);
   if (parsed.ok) return ok(varied);
   const index = sheet.claims.findIndex((claim) => claim['id'] === varied.claims[0]?.['id']);
   return fail('invalid', 'With these changes the claim cannot be read.', parsed.error.map((problem) => ({ ...problem, where: placeIn(problem, changes, index) })));
 }
 
-function placeIn({ where }: Problem, { settings = {} }: VariationChanges, index: number): string {
+function placeIn({ where }: Problem, { settings = {} }: SheetChanges, index: number): string {
   const name = /^\/claims\/0\/(?:settings|over)\/([^/]+)/.exec(where)?.[1];
   if (name !== undefined && name in settings) return where.replace(/^\/claims\/0\/(?:settings|over)/, '/changes/settings');
   return where.startsWith('/noise/varied') ? '/changes/noise' : where.replace(/^\/claims\/0/, `/claims/${index}`);
@@ -53,7 +55,7 @@ function withSettings(claim: Claim, changed: Readonly<Record<string, unknown>>):
   return ok(atOnePoint({ ...claim, settings }));
 }
 
-function changedNoise(sheet: DraftSheet, { noise }: VariationChanges): Outcome<{ readonly curves: DraftSheet['noise']; readonly name: string | null }> {
+function changedNoise(sheet: DraftSheet, { noise }: SheetChanges): Outcome<{ readonly curves: DraftSheet['noise']; readonly name: string | null }> {
   if (!noise) return ok({ curves: sheet.noise, name: null });
   if ('curve' in noise) {
     const name = freeName(sheet.noise);

@@ -6,15 +6,16 @@ import { changesAsWords, changesInput, changesOf } from '@/lib/services/variatio
 
 describe('the form of a variation', () => {
   const declared = { fLowHz: 20, taper: 'none' };
+  const nothing = fieldsFrom({});
 
   it('gives what was typed in the type that the setting asks for', () => {
-    const typed = { settings: { fLowHz: '30', modes: '[[2,2]]', maximise: 'time, phase', includeEnergyBeforeStart: 'true', at: '0.3' }, noise: 'named:S', note: '' };
+    const typed = { ...nothing, settings: { fLowHz: '30', modes: '[[2,2]]', maximise: 'time, phase', includeEnergyBeforeStart: 'true', at: '0.3' }, noise: 'named:S' };
     expect(changesFrom(typed, declared)).toEqual({ settings: { fLowHz: 30, modes: [[2, 2]], maximise: ['time', 'phase'], includeEnergyBeforeStart: true, at: { timeM: 0.3 } }, noise: { named: 'S' } });
   });
 
   it('takes a declared setting away when its box is emptied, and leaves another as it is', () => {
-    expect(changesFrom({ settings: { taper: ' ', lMax: '' }, noise: '', note: '' }, declared)).toEqual({ settings: { taper: null } });
-    expect(isUnchanged(changesFrom({ settings: { lMax: '' }, noise: '', note: '' }, declared))).toBe(true);
+    expect(changesFrom({ ...nothing, settings: { taper: ' ', lMax: '' } }, declared)).toEqual({ settings: { taper: null } });
+    expect(isUnchanged(changesFrom({ ...nothing, settings: { lMax: '' } }, declared))).toBe(true);
   });
 
   it('is filled by changes and gives the same back', () => {

@@ -28,7 +28,7 @@ function Reading({ draft, variations, asked }: { readonly draft: DraftView; read
   if (view.claims.length === 0) return null;
   // With another sheet meanwhile, the number beside would be another's.
   const current = draft.check?.current && draft.check.run.state === 'measured' ? draft.check.run.result : null;
-  const action = variationSlot({ revision: { submissionId: draft.id, revision: draft.revision.number, sheet: draft.revision.sheet }, result: current, variations, asked });
+  const action = variationSlot({ revision: { submissionId: draft.id, revision: draft.revision.number, isDraft: true, sheet: draft.revision.sheet }, result: current, variations, asked });
   return (
     <section aria-labelledby="reading-h" className="mt-12">
       <h2 id="reading-h" className="mb-1">What the check reads</h2>
@@ -45,7 +45,7 @@ export default async function Compose({ params, searchParams }: PageProps) {
   if (draft.revision.lodgedAt !== null) redirect(`/submissions/${id}`);
   const you = await loadMember(`/compose/${id}`);
   const uploads = await loadFor(`/compose/${id}`, (actor) => listOpenUploads(actor, id));
-  const variations = draft.may.vary ? await loadFor(`/compose/${id}`, (actor) => listVariations(actor, id)) : null;
+  const variations = draft.may.vary ? await loadFor(`/compose/${id}`, (actor) => listVariations(actor, id, draft.revision.number)) : null;
   const { revision } = draft;
   return (
     <Composer key={revision.id} id={id} revision={revision.number} version={revision.version} sheet={revision.sheet} files={revision.files} uploads={uploads} authors={draft.authors} you={you.userId} stateWords={draft.stateWords} catalogue={catalogueRows()} check={checkSummary(draft.check, revision.answers)} beforeLodging={draft.beforeLodging}>

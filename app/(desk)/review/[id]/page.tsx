@@ -36,7 +36,7 @@ async function loadAll(actor: Actor, id: string, revision: number | undefined) {
   const run = lodged.value.run;
   const figures = run?.state === 'measured' ? await getFigures(actor, id, run.id) : null;
   const candidates = desk.value.may.invite ? await listRefereeCandidates(actor, id) : null;
-  const variations = lodged.value.may.vary && isSignedIn(actor) ? await listVariations(actor, id) : null;
+  const variations = lodged.value.may.vary && isSignedIn(actor) ? await listVariations(actor, id, lodged.value.revision.number) : null;
   return {
     ok: true as const,
     value: {

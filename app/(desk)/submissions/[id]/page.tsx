@@ -42,7 +42,7 @@ async function loadAll(actor: Actor, id: string, wanted: number | undefined) {
   if (!lodged.ok) return lodged;
   if (!desk.ok) return desk;
   if (desk.value.you.role !== 'author' && desk.value.you.role !== 'co-author') return { ok: false as const, error: NOT_FOUND };
-  const variations = lodged.value.may.vary && isSignedIn(actor) ? await listVariations(actor, id) : null;
+  const variations = lodged.value.may.vary && isSignedIn(actor) ? await listVariations(actor, id, lodged.value.revision.number) : null;
   return { ok: true as const, value: { you: isSignedIn(actor) ? actor.userId : '', draft: draft.value, lodged: lodged.value, desk: desk.value, variations: variations?.ok ? variations.value : null } };
 }
 

@@ -43,7 +43,7 @@ const signInToVary = (id: string) =>
 
 /** Signed-in readers vary the official run of the revision that was entered. */
 async function variationsOf(actor: Actor, lodged: LodgedView | null) {
-  const list = lodged?.may.vary && isSignedIn(actor) ? await listVariations(actor, lodged.id) : null;
+  const list = lodged?.may.vary && isSignedIn(actor) ? await listVariations(actor, lodged.id, lodged.revision.number) : null;
   return list?.ok ? list.value : null;
 }
 

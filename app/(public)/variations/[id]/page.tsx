@@ -14,6 +14,8 @@ import type { ResultClaim } from '@/lib/pipeline/result';
 import { getFigures } from '@/lib/services/runs/list-runs';
 import { getVariation } from '@/lib/services/variations/get-variation';
 import type { VariationPage } from '@/lib/services/variations/variation-view';
+import { askedAgain } from '@/lib/services/variations/changes';
+import { askingQuery } from '../asked-variation';
 import { ChangedTable } from '../changed-table';
 import { comparePoints } from '../compare';
 import { ComparedTable } from '../compared-table';
@@ -48,6 +50,12 @@ function wayBack({ from, claimId }: Pick<VariationPage, 'from' | 'claimId'>): { 
   return { href: `${path}/${from.id}?open=${encodeURIComponent(claimId)}#${encodeURIComponent(claimId)}`, label };
 }
 
+/** Says of readings that they are readings: the engine did what the words say, not what the authors declared. */
+function withWhat({ settings, noise, readings, mask }: VariationPage['changes']): string {
+  const parts = [...(settings || noise ? ['with other settings'] : []), ...(readings ? ['with its inputs or its number read otherwise'] : []), ...(mask ? ['with a stretch of time left out'] : [])];
+  return parts.length > 1 ? `${parts.slice(0, -1).join(', ')} and ${parts.at(-1) ?? ''}` : (parts[0] ?? 'with other settings');
+}
+
 function Head({ variation }: { readonly variation: VariationPage }) {
   const { claimId, official, title, revision, ofDraft } = variation;
   const back = wayBack(variation);
@@ -55,7 +63,7 @@ function Head({ variation }: { readonly variation: VariationPage }) {
     <header className="pt-10 pb-6">
       <p className="mb-2 flex flex-wrap items-center gap-x-2.5 gap-y-1 text-ui text-ink-2"><Link href={back.href as Route} className="inline-flex min-h-8 items-center">{back.label}</Link><span aria-hidden>/</span><span>Variation of {claimId}</span></p>
       <h1>{claimId}, {quantities.get(official.quantity)?.title ?? official.quantity}, varied</h1>
-      <p className="mt-2 max-w-[68ch] text-ink-2">A rerun of one claim of “{title || 'Untitled'}”, {ofDraft ? `draft of revision ${revision}` : `revision ${revision}`}, with other settings. It is never official, and no verdict hangs on it.</p>
+      <p className="mt-2 max-w-[68ch] text-ink-2">A rerun of one claim of “{title || 'Untitled'}”, {ofDraft ? `draft of revision ${revision}` : `revision ${revision}`}, {withWhat(variation.changes)}. It is never official, and no verdict hangs on it.</p>
     </header>
   );
 }
@@ -124,7 +132,6 @@ function Plots({ claimId, variation, figures }: { readonly claimId: string; read
 function againHref({ from, claimId, changes }: VariationPage): string {
   const { href } = wayBack({ from, claimId });
   const [path = '', hash = ''] = href.split('#');
-  const noise = changes.noise && ('curve' in changes.noise ? changes.noise.curve : `named:${changes.noise.named}`);
-  const query = new URLSearchParams({ vary: claimId, ...(changes.settings && { settings: JSON.stringify(changes.settings) }), ...(noise && { noise }) });
+  const query = askingQuery(claimId, askedAgain(changes));
   return `${path}&${query.toString()}#${hash}`;
 }
