@@ -64,14 +64,16 @@ function parseClaimedList(raw: RawClaim, path: readonly PropertyKey[], over: Swe
     return [];
   }
   const swept = raw.over !== undefined;
-  const given = swept && isBound(raw.claimed) ? Array.from({ length: over?.values.length ?? 1 }, () => raw.claimed) : raw.claimed;
+  const listed = over ? raw.over?.[over.setting] : undefined;
+  const points = Array.isArray(listed) ? listed.length : 0;
+  const given = swept && isBound(raw.claimed) ? Array.from({ length: Math.max(1, points) }, () => raw.claimed) : raw.claimed;
   if (swept !== Array.isArray(given)) {
     problems.push({ code: 'claims/claimed', where: pointer(...at), saw: swept ? `one entry, ${describe(given)}` : `a list, ${describe(given)}`, expected: swept ? 'a list with one entry for each value of "over", or one inequality for them all' : 'one entry, as nothing is swept', ...(swept ? {} : { hint: 'Name the swept setting in "over".' }) });
     return [];
   }
   const entries: readonly unknown[] = Array.isArray(given) ? given : [given];
-  if (over && over.values.length > 0 && entries.length !== over.values.length)
-    problems.push({ code: 'claims/claimed', where: pointer(...at), saw: `${entries.length} claimed entr${entries.length === 1 ? 'y' : 'ies'}`, expected: `${over.values.length}, one for each value of "over"` });
+  if (points > 0 && entries.length !== points)
+    problems.push({ code: 'claims/claimed', where: pointer(...at), saw: `${entries.length} claimed entr${entries.length === 1 ? 'y' : 'ies'}`, expected: `${points}, one for each value of "over"` });
   const claimed = entries.flatMap((entry, i) => {
     const parsed = parseClaimed(entry);
     if (parsed.ok) return [parsed.value];

@@ -65,7 +65,7 @@ export interface Claim {
   readonly b?: Waveform;
   readonly noise?: NoiseCurve;
   readonly settings?: DeclaredSettings;
-  readonly over?: { readonly setting: SettingName; readonly values: readonly number[] };
+  readonly over?: { readonly setting: SettingName; readonly values: readonly (number | string)[] };
   readonly claimed?: readonly (number | null)[];
   readonly withFigures?: boolean;
 }

@@ -1,3 +1,4 @@
+import type { Figure } from '@/lib/engine/contract/measurement';
 import { decimalsFor, formatNumber, powerOfTen } from '../math/format-number';
 
 /**
@@ -59,6 +60,21 @@ function shifted(power: number): AxisScale {
 }
 
 
+/** Words side by side, each at its place; between two of them is nothing. */
+const wordScale = (words: readonly string[]): AxisScale => {
+  const at = (place: number): string => words[Math.round(place)] ?? '';
+  const ticks = (low: number, high: number) => words.flatMap((_, i) => (i >= low && i <= high ? [i] : []));
+  return { ...linearScale, ticks, labels: (places) => places.map(at), valueLabel: at };
+};
+
+/** The horizontal axis of a figure. */
+export const acrossScale = ({ x }: Figure): AxisScale => (x.words ? wordScale(x.words) : axisScale(x.scale, x.values));
+
+/** What the horizontal axis spans; words have half a step of room on either side. */
+export function acrossEnds({ x }: Figure): readonly [number, number] {
+  const [low, high] = [x.values[0] ?? 0, x.values.at(-1) ?? 0];
+  return x.words ? [low - 0.5, high + 0.5] : [low, high];
+}
 
 /** A log axis only where it can be one: all values above zero, and more than a factor five apart. */
 export function axisScale(wanted: 'linear' | 'log', values: readonly (number | null)[]): AxisScale {

@@ -2,7 +2,7 @@
 import { useEffect, useMemo, useRef, useState, type ReactNode } from 'react';
 import type uPlot from 'uplot';
 import type { Figure } from '@/lib/engine/contract/measurement';
-import { axisScale } from './axis-scale';
+import { acrossEnds, acrossScale } from './axis-scale';
 import { usePalette } from './palette-in-use';
 import type { Panel } from './panels';
 import { plotSpec } from './plot-options';
@@ -27,9 +27,9 @@ type Reports = Pick<PanelMountProps, 'onIndex' | 'onChoice' | 'onRange'>;
 const SHORTEST_DRAG_PX = 6;
 
 /** Where values lie on the library's own axis. */
-const viewIn = (figure: Figure, data: uPlot.AlignedData, range: Range | null): { min: number; max: number } | null => {
-  const scale = axisScale(figure.x.scale, figure.x.values);
-  const [low, high] = range ? [scale.toPlot(range[0]), scale.toPlot(range[1])] : [data[0][0], data[0].at(-1)];
+const viewIn = (figure: Figure, range: Range | null): { min: number; max: number } | null => {
+  const scale = acrossScale(figure);
+  const [low, high] = (range ?? acrossEnds(figure)).map((end) => scale.toPlot(end));
   return low === null || high === null || low === undefined || high === undefined || !(high > low) ? null : { min: low, max: high };
 };
 
@@ -41,7 +41,7 @@ function showAt(plot: uPlot, data: uPlot.AlignedData, index: number) {
 
 /** Pointer: what it passes over, a click that chooses, a stroke that becomes the view. */
 function hooksFor(figure: Figure, reports: { readonly current: Reports }, restore: (u: uPlot) => void): uPlot.Hooks.Arrays {
-  const scale = axisScale(figure.x.scale, figure.x.values);
+  const scale = acrossScale(figure);
   return {
     ready: [restore],
     setSize: [restore],
@@ -84,7 +84,7 @@ export function PanelMount({ figure, panel, index, range, onIndex, onChoice, onR
       const { default: UPlot } = await import('uplot');
       if (gone) return;
       const restore = (u: uPlot) => {
-        const view = viewIn(figure, spec.data, at.current.range);
+        const view = viewIn(figure, at.current.range);
         if (view) u.setScale('x', view);
         showAt(u, spec.data, at.current.index);
       };
@@ -106,7 +106,7 @@ export function PanelMount({ figure, panel, index, range, onIndex, onChoice, onR
     };
   }, [figure, spec, panel.heightPx]);
   useEffect(() => {
-    const view = plot.current && viewIn(figure, spec.data, range);
+    const view = plot.current && viewIn(figure, range);
     if (plot.current && view) plot.current.setScale('x', view);
   }, [figure, range, spec]);
   useEffect(() => {

@@ -38,9 +38,12 @@ export function panelsOf(figure: Figure): readonly Panel[] {
   });
 }
 
-/** The claimed values of a sweep are points; claimed traces of waveforms are lines. */
+/** The claimed values of a sweep are points, and all of them over words, between which nothing lies; claimed traces of waveforms are lines. */
 export const drawnAsPoints = (figure: Figure, series: FigureSeries): boolean =>
-  figure.kind === 'sweep' && (series.role === 'claimed' || (series.role === 'varied' && isLonely(series)));
+  figure.kind === 'sweep' && (figure.x.words !== undefined || series.role === 'claimed' || (series.role === 'varied' && isLonely(series)));
+
+/** Where both are points, the recomputed one is full: told apart without colour. */
+export const drawnFull = (series: FigureSeries): boolean => series.role === 'recomputed';
 
 /** One value of a sweep makes no line. */
 const isLonely = (series: FigureSeries): boolean => series.values.filter((value) => value !== null).length < 2;

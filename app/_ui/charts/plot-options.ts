@@ -1,8 +1,8 @@
 import type uPlot from 'uplot';
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 import type { Palette } from '../tokens';
-import { axisScale, type AxisScale } from './axis-scale';
-import { drawnAsPoints, drawnDashed, panelsOf, type Panel } from './panels';
+import { acrossScale, axisScale, type AxisScale } from './axis-scale';
+import { drawnAsPoints, drawnDashed, drawnFull, panelsOf, type Panel } from './panels';
 
 export interface PlotSpec {
   readonly options: Omit<uPlot.Options, 'width'>;
@@ -20,15 +20,30 @@ const roleColour: Record<FigureSeries['role'], keyof Palette> = {
 };
 export const colourOf = (series: FigureSeries): keyof Palette => roleColour[series.role];
 
-function seriesOptions(figure: Figure, series: FigureSeries, palette: Palette): uPlot.Series {
+/** Over words a band would join what is apart: an upright bar at each instead, from the lower edge to the upper. */
+const bars = (lower: number): uPlot.Series.PathBuilder => (u, upper, from, to) => {
+  const stroke = new Path2D();
+  for (let i = from; i <= to; i++) {
+    const [x, low, high] = [u.data[0][i], u.data[lower]?.[i], u.data[upper]?.[i]];
+    if (x === undefined || typeof low !== 'number' || typeof high !== 'number') continue;
+    const across = u.valToPos(x, 'x', true);
+    stroke.moveTo(across, u.valToPos(low, 'y', true));
+    stroke.lineTo(across, u.valToPos(high, 'y', true));
+  }
+  return { stroke };
+};
+
+function seriesOptions(figure: Figure, panel: Panel, series: FigureSeries, palette: Palette): uPlot.Series {
   const stroke = palette[colourOf(series)];
   const base = { label: series.label, scale: 'y', spanGaps: false };
+  if (series.role === 'band-high' && figure.x.words) return { ...base, stroke, width: 1.6, points: { show: false }, paths: bars(panel.series.findIndex((s) => s.role === 'band-low') + 1) };
   if (series.role === 'band-low' || series.role === 'band-high') return { ...base, stroke: 'transparent', width: 0, points: { show: false } };
-  if (drawnAsPoints(figure, series)) return { ...base, stroke, width: 0, points: { show: true, size: 9, width: 2.5, stroke, fill: palette.sheet } };
+  if (drawnAsPoints(figure, series)) return { ...base, stroke, width: 0, points: { show: true, size: drawnFull(series) ? 7 : 9, width: 2.5, stroke, fill: drawnFull(series) ? stroke : palette.sheet } };
   return { ...base, stroke, width: 1.6, dash: drawnDashed(figure, series) ? [5, 3] : undefined, points: { show: false } };
 }
 
-function bandsOf(panel: Panel, palette: Palette): uPlot.Band[] {
+function bandsOf(figure: Figure, panel: Panel, palette: Palette): uPlot.Band[] {
+  if (figure.x.words) return [];
   const high = panel.series.findIndex((s) => s.role === 'band-high');
   const low = panel.series.findIndex((s) => s.role === 'band-low');
   return high >= 0 && low >= 0 ? [{ series: [high + 1, low + 1], fill: palette.band }] : [];
@@ -49,7 +64,7 @@ function labelRoom(figure: Figure): number {
 export function plotSpec(figure: Figure, panel: Panel, palette: Palette): PlotSpec {
   const grid = { stroke: palette.hair, width: 1 };
   const axis = { stroke: palette['ink-2'], font: '12px sans-serif', grid, ticks: { show: false } };
-  const x = axisScale(figure.x.scale, figure.x.values);
+  const x = acrossScale(figure);
   const y = axisScale(panel.scale, panel.series.flatMap((s) => s.values));
   const options: Omit<uPlot.Options, 'width'> = {
     height: panel.heightPx,
@@ -61,8 +76,8 @@ export function plotSpec(figure: Figure, panel: Panel, palette: Palette): PlotSp
       { ...axis, scale: 'x', size: panel.showsX ? 28 : 0, splits: splitsOf(x), values: (_, places) => (panel.showsX ? x.labels(places) : places.map(() => '')) },
       { ...axis, scale: 'y', size: labelRoom(figure), gap: 6, splits: splitsOf(y), values: (_, places) => y.labels(places) },
     ],
-    series: [{ label: figure.x.label }, ...panel.series.map((s) => seriesOptions(figure, s, palette))],
-    bands: bandsOf(panel, palette),
+    series: [{ label: figure.x.label }, ...panel.series.map((s) => seriesOptions(figure, panel, s, palette))],
+    bands: bandsOf(figure, panel, palette),
   };
   const column = (values: readonly (number | null)[], scale: AxisScale) => values.map((v) => (v === null ? null : scale.toPlot(v)));
   return { options, data: [column(figure.x.values, x), ...panel.series.map((s) => column(s.values, y))] as uPlot.AlignedData };

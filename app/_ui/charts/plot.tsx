@@ -2,10 +2,10 @@
 import { useMemo, type KeyboardEvent, type ReactNode } from 'react';
 import type { Figure } from '@/lib/engine/contract/measurement';
 import { UnitLabel } from '../math/unit-label';
-import { axisScale } from './axis-scale';
+import { acrossEnds, acrossScale } from './axis-scale';
 import { nearestIndex, useCursorLink } from './cursor-link';
 import { PanelMount } from './panel-mount';
-import { cursorGroup, drawnAsPoints, drawnDashed, panelsOf } from './panels';
+import { cursorGroup, drawnAsPoints, drawnDashed, drawnFull, panelsOf } from './panels';
 import { colourOf } from './plot-options';
 import { PlotTools } from './plot-tools';
 import { readoutOf, steppedIndex } from './readout';
@@ -20,7 +20,7 @@ function Key({ figure }: { readonly figure: Figure }) {
         <span key={s.label + s.role} className="min-w-0">
           <svg viewBox="0 0 24 8" aria-hidden="true" className="mr-1.5 inline-block h-2 w-6">
             {drawnAsPoints(figure, s) ? (
-              <circle cx="12" cy="4" r="3" fill="none" strokeWidth="2" stroke={`var(--${colourOf(s)})`} />
+              <circle cx="12" cy="4" r="3" fill={drawnFull(s) ? `var(--${colourOf(s)})` : 'none'} strokeWidth="2" stroke={`var(--${colourOf(s)})`} />
             ) : (
               <path d="M0 4H24" fill="none" strokeWidth="1.6" stroke={`var(--${colourOf(s)})`} strokeDasharray={drawnDashed(figure, s) ? '5 3' : undefined} />
             )}
@@ -28,7 +28,7 @@ function Key({ figure }: { readonly figure: Figure }) {
           {s.label}{s.unit && <>, <UnitLabel unit={s.unit} /></>}
         </span>
       ))}
-      {hasBand && <span className="whitespace-nowrap"><svg viewBox="0 0 24 8" aria-hidden="true" className="mr-1.5 inline-block h-2 w-6"><rect width="24" height="8" fill="var(--band)" /></svg>error band</span>}
+      {hasBand && <span className="whitespace-nowrap"><svg viewBox="0 0 24 8" aria-hidden="true" className="mr-1.5 inline-block h-2 w-6">{figure.x.words ? <path d="M12 0V8" stroke="var(--trace-recomputed)" strokeWidth="1.6" /> : <rect width="24" height="8" fill="var(--band)" />}</svg>{figure.x.words ? 'error bar' : 'error band'}</span>}
     </span>
   );
 }
@@ -38,7 +38,7 @@ function useView(claimId: string, figure: Figure) {
   const group = cursorGroup(claimId, figure);
   const link = useCursorLink();
   const xs = figure.x.values;
-  const axis = useMemo(() => ({ scale: axisScale(figure.x.scale, xs), whole: [xs[0] ?? 0, xs.at(-1) ?? 0] as Range }), [figure.x.scale, xs]);
+  const axis = useMemo(() => ({ scale: acrossScale(figure), whole: acrossEnds(figure) as Range }), [figure]);
   const asked = link.ranges[group];
   const range = useMemo(() => shownRange(asked, axis), [asked, axis]);
   const place = link.places[group];

@@ -6,6 +6,8 @@ const withUnit = (text: string, unit: string) => (unitText(unit) ? `${text} ${un
 
 /** Steps of the axis decide how finely a place is told. */
 function placeText(figure: Figure, index: number): string {
+  const word = figure.x.words?.[index];
+  if (word !== undefined) return `“${word}”`;
   const x = figure.x.values[index] ?? 0;
   const span = Math.abs((figure.x.values.at(-1) ?? 0) - (figure.x.values[0] ?? 0)) || 1;
   return withUnit(formatNumber(x, { decimals: decimalsFor(figure.x.scale === 'log' ? Math.abs(x) / 1000 || 1 : span / 1000, 1) }), figure.x.unit);

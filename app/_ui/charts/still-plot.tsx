@@ -1,6 +1,6 @@
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
-import { axisScale, type AxisScale } from './axis-scale';
-import { drawnAsPoints, drawnDashed, type Panel } from './panels';
+import { acrossEnds, acrossScale, axisScale, type AxisScale } from './axis-scale';
+import { drawnAsPoints, drawnDashed, drawnFull, type Panel } from './panels';
 import { colourOf } from './plot-options';
 
 const most = 400;
@@ -11,8 +11,7 @@ interface Span {
   readonly scale: AxisScale;
 }
 
-function spanOf(values: readonly (number | null)[], wanted: 'linear' | 'log', margin: number): Span {
-  const scale = axisScale(wanted, values);
+function spanOf(values: readonly (number | null)[], scale: AxisScale, margin: number): Span {
   const known = values.flatMap((v) => (v === null ? [] : [scale.toPlot(v)])).filter((v): v is number => v !== null && Number.isFinite(v));
   const low = known.reduce((a, b) => Math.min(a, b), Infinity);
   const high = known.reduce((a, b) => Math.max(a, b), -Infinity);
@@ -50,14 +49,15 @@ function dotsOf(figure: Figure, series: FigureSeries, x: Span, y: Span): string 
 
 function Trace({ figure, series, x, y }: { readonly figure: Figure; readonly series: FigureSeries; readonly x: Span; readonly y: Span }) {
   const stroke = `var(--${colourOf(series)})`;
-  if (drawnAsPoints(figure, series)) return <path d={dotsOf(figure, series, x, y)} stroke={stroke} strokeWidth="9" strokeLinecap="round" vectorEffect="non-scaling-stroke" />;
+  if (drawnAsPoints(figure, series)) return <path d={dotsOf(figure, series, x, y)} stroke={stroke} strokeWidth={drawnFull(series) ? 6 : 9} strokeLinecap="round" vectorEffect="non-scaling-stroke" />;
   return <path d={pathOf(figure, series.values, x, y)} fill="none" stroke={stroke} strokeWidth="1.6" strokeDasharray={drawnDashed(figure, series) ? '5 3' : undefined} vectorEffect="non-scaling-stroke" />;
 }
 
 /** The same panel without script: paths in a stretched SVG, the scales told in words below. */
 export function StillPlot({ figure, panel }: { readonly figure: Figure; readonly panel: Panel }) {
-  const x = spanOf(figure.x.values, figure.x.scale, 0);
-  const y = spanOf(panel.series.flatMap((s) => s.values), panel.scale, 0.05);
+  const x = spanOf(figure.x.values.length > 0 ? acrossEnds(figure) : [], acrossScale(figure), 0);
+  const heights = panel.series.flatMap((s) => s.values);
+  const y = spanOf(heights, axisScale(panel.scale, heights), 0.05);
   return (
     <svg viewBox="0 0 1000 1000" preserveAspectRatio="none" aria-hidden="true" className="h-full w-full bg-sheet">
       {panel.series.filter((s) => s.role !== 'band-low' && s.role !== 'band-high').map((s) => <Trace key={s.label + s.role} figure={figure} series={s} x={x} y={y} />)}

@@ -27,7 +27,7 @@ export function ValuesTable({ figure }: { readonly figure: Figure }) {
             <tbody>
               {figure.x.values.map((x, i) => (
                 <tr key={i}>
-                  <th scope="row" className="num font-normal!">{formatNumber(x, { significant: 8 })}</th>
+                  <th scope="row" className="num font-normal!">{figure.x.words?.[i] ?? formatNumber(x, { significant: 8 })}</th>
                   {figure.series.map((s) => <td key={s.label + s.role} className="num">{(s.values[i] ?? null) === null ? 'no value' : formatNumber(s.values[i] ?? null, { significant: 8 })}</td>)}
                 </tr>
               ))}

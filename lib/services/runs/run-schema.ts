@@ -17,7 +17,7 @@ export const runSchema = z
   ])
   .meta({ id: 'Run' });
 
-const axis = z.object({ label: z.string(), unit: z.string(), scale: z.enum(['linear', 'log']), values: z.array(z.number()) });
+const axis = z.object({ label: z.string(), unit: z.string(), scale: z.enum(['linear', 'log']), values: z.array(z.number()), words: z.array(z.string()).optional() });
 const series = z.object({ label: z.string(), unit: z.string(), role: z.string(), axis: z.enum(['left', 'right']), scale: z.enum(['linear', 'log']), values: z.array(z.number().nullable()) });
 const figure = z.looseObject({ kind: z.string(), title: z.string(), at: z.record(z.string(), z.union([z.number(), z.string()])).optional(), x: axis, series: z.array(series) });
 

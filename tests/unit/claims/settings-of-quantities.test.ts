@@ -14,7 +14,7 @@ describe('every quantity that can be claimed', () => {
     expect(new Set(quantity.settings).size).toBe(quantity.settings.length);
   });
 
-  it.each(quantities.map((quantity) => [quantity.id, quantity] as const))('%s sweeps only over settings that are numbers, or places with a number to sweep', (_, quantity) => {
+  it.each(quantities.map((quantity) => [quantity.id, quantity] as const))('%s sweeps only over settings that are numbers, have numbers and words, or are places with a number to sweep', (_, quantity) => {
     for (const name of quantity.sweepable) {
       const row = settingsTable.get(name);
       expect(row && (['number', 'integer', 'taper'].includes(row.shape.kind) || (row.shape.kind === 'place' && row.shape.swept !== undefined)), name).toBe(true);

@@ -11,7 +11,7 @@ const comment = (words: string): string => `# ${words.replace(/\s+/g, ' ')}`;
  */
 export function figureCsv(figure: Figure, origin: FigureOrigin): string {
   const header = [xLabel(figure), ...figure.series.map((s) => withUnit(s.label, s.unit))];
-  const rows = figure.x.values.map((x, i) => [x, ...figure.series.map((s) => s.values[i] ?? null)]);
+  const rows = figure.x.values.map((x, i) => [figure.x.words?.[i] ?? x, ...figure.series.map((s) => s.values[i] ?? null)]);
   const count = figure.x.values.length;
   const notes = [
     `${titleOf(figure, origin)}; ${origin.source}; claim ${origin.claimId}, ${origin.quantity}, ${pointWords(figure, origin)}`,

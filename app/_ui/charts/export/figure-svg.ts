@@ -1,11 +1,11 @@
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 import { light } from '../../tokens';
-import { axisScale } from '../axis-scale';
+import { acrossEnds, acrossScale, axisScale } from '../axis-scale';
 import { isBand, panelsOf, type Panel } from '../panels';
 import { axisTicks } from './axis-ticks';
 import { pointWords, titleOf, xLabel, yLabel, type FigureOrigin } from './figure-words';
 import { extentOf, type Extent, type Frame } from './frame';
-import { bandPath, linePath, pointsOf } from './trace-paths';
+import { bandPath, barsPath, linePath, pointsOf } from './trace-paths';
 import { traceStyle } from './trace-style';
 import { xmlText } from './xml-text';
 
@@ -51,8 +51,7 @@ function inRange(figure: Figure, series: FigureSeries, range: SvgRequest['range'
 }
 
 function xExtent({ figure, range }: SvgRequest): Extent {
-  const scale = axisScale(figure.x.scale, figure.x.values);
-  return extentOf(range ? [range[0], range[1]] : figure.x.values, scale, 0);
+  return extentOf(range ? [range[0], range[1]] : figure.x.values.length > 0 ? acrossEnds(figure) : [], acrossScale(figure), 0);
 }
 
 function axes(frame: Frame, label: string, showsX: boolean): string {
@@ -76,10 +75,11 @@ function axes(frame: Frame, label: string, showsX: boolean): string {
 function traces(figure: Figure, panel: Panel, frame: Frame, clip: string): string {
   const xs = figure.x.values;
   const [low, high] = ['band-low', 'band-high'].map((role) => panel.series.find((s) => s.role === role));
-  const band = low && high ? `<path d="${bandPath(xs, low.values, high.values, frame)}" fill="${light['trace-recomputed']}" fill-opacity="0.2" stroke="none"/>` : '';
+  const blue = light['trace-recomputed'];
+  const band = low && high ? (figure.x.words ? `<path d="${barsPath(xs, low.values, high.values, frame)}" fill="none" stroke="${blue}" stroke-width="1.8"/>` : `<path d="${bandPath(xs, low.values, high.values, frame)}" fill="${blue}" fill-opacity="0.2" stroke="none"/>`) : '';
   const drawn = panel.series.filter((s) => !isBand(s)).map((series) => {
-    const { colour, width, dash, points } = traceStyle(figure, series);
-    if (points) return pointsOf(xs, series, frame).map(({ x, y }) => `<circle cx="${x.toFixed(2)}" cy="${y.toFixed(2)}" r="4" fill="${light.sheet}" stroke="${colour}" stroke-width="1.8"/>`).join('');
+    const { colour, width, dash, points, full } = traceStyle(figure, series);
+    if (points) return pointsOf(xs, series, frame).map(({ x, y }) => `<circle cx="${x.toFixed(2)}" cy="${y.toFixed(2)}" r="${full ? 3 : 4.5}" fill="${full ? colour : 'none'}" stroke="${colour}" stroke-width="1.8"/>`).join('');
     return `<path d="${linePath(xs, series.values, frame)}" fill="none" stroke="${colour}" stroke-width="${width}"${dash ? ` stroke-dasharray="${dash}"` : ''} stroke-linejoin="round"/>`;
   });
   return `<g clip-path="url(#${clip})">${band}${drawn.join('')}</g>`;
@@ -95,7 +95,7 @@ function legend(figure: Figure, top: number): Placed {
   const lines = figure.series.filter((s) => !isBand(s));
   const entries = lines.map((series) => ({ words: series.label, style: traceStyle(figure, series) }));
   const hasBand = figure.series.some((s) => s.role === 'band-high');
-  const cells = [...entries.map(({ words, style }) => ({ words, sample: (x: number, y: number) => (style.points ? `<circle cx="${x + 16}" cy="${y - 4}" r="4" fill="${light.sheet}" stroke="${style.colour}" stroke-width="1.8"/>` : `<path d="M${x} ${y - 4}H${x + 32}" fill="none" stroke="${style.colour}" stroke-width="${style.width}"${style.dash ? ` stroke-dasharray="${style.dash}"` : ''}/>`) })), ...(hasBand ? [{ words: 'error band, ± U', sample: (x: number, y: number) => `<rect x="${x}" y="${y - 9}" width="32" height="10" fill="${light['trace-recomputed']}" fill-opacity="0.2"/>` }] : [])];
+  const cells = [...entries.map(({ words, style }) => ({ words, sample: (x: number, y: number) => (style.points ? `<circle cx="${x + 16}" cy="${y - 4}" r="4" fill="${style.full ? style.colour : light.sheet}" stroke="${style.colour}" stroke-width="1.8"/>` : `<path d="M${x} ${y - 4}H${x + 32}" fill="none" stroke="${style.colour}" stroke-width="${style.width}"${style.dash ? ` stroke-dasharray="${style.dash}"` : ''}/>`) })), ...(hasBand ? [{ words: figure.x.words ? 'error bar, ± U' : 'error band, ± U', sample: (x: number, y: number) => figure.x.words ? `<path d="M${x + 16} ${y - 10}V${y + 2}" stroke="${light['trace-recomputed']}" stroke-width="1.8"/>` : `<rect x="${x}" y="${y - 9}" width="32" height="10" fill="${light['trace-recomputed']}" fill-opacity="0.2"/>` }] : [])];
   const half = (WIDTH - LEFT - RIGHT) / 2;
   const marks = cells.map(({ words, sample }, i) => {
     const x = LEFT + (i % 2) * half;

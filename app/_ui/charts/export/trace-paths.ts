@@ -50,3 +50,13 @@ export function bandPath(xs: readonly number[], low: readonly (number | null)[],
   close();
   return path;
 }
+
+/** An upright bar at every place that has both edges. */
+export function barsPath(xs: readonly number[], low: readonly (number | null)[], high: readonly (number | null)[], frame: Frame): string {
+  return xs
+    .map((value, i) => {
+      const [x, a, b] = [toX(value, frame), toY(low[i], frame), toY(high[i], frame)];
+      return x === null || a === null || b === null ? '' : `M${pair(x, a)}L${pair(x, b)}`;
+    })
+    .join('');
+}
