@@ -93,6 +93,22 @@ const search = z.looseObject({
   readings: z.array(z.looseObject({ id: z.string(), clause: z.string().optional(), values: z.array(nullable).optional(), because: z.string().optional() })),
 });
 
+/** What a file says of a word of the sheet; it moves no number until its author confirms it. */
+const guess = z.looseObject({
+  about: z.string(),
+  part: z.enum(['waveforms', 'noise']),
+  name: z.string(),
+  field: z.string(),
+  standing: z.enum(['declared', 'assumed']),
+  value: z.union([z.string(), z.number()]).nullable(),
+  agrees: z.boolean(),
+  proposed: z.string(),
+  changes: z.array(z.looseObject({ field: z.string(), value: z.unknown() })).nullable(),
+  reason: z.string(),
+  confidence: z.number().min(0).max(1),
+  convention: z.looseObject({ id: z.string(), title: z.string(), sentence: z.string() }).nullable(),
+});
+
 export const resultClaimSchema = z.looseObject({
   id: z.string(),
   quantity: z.string(),
@@ -119,4 +135,5 @@ export const resultSchema = z.looseObject({
   title: z.string(),
   files: z.array(z.object({ name: z.string(), bytes: z.int(), sha256: z.string() })),
   claims: z.array(resultClaimSchema).min(1),
+  guesses: z.array(guess).optional(),
 });

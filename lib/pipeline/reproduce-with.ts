@@ -1,6 +1,7 @@
 import type { Catalogue } from '@/lib/claims/catalogue';
 import type { Claim, ClaimSheet } from '@/lib/claims/claim';
 import { parseClaimSheet } from '@/lib/claims/parse-sheet';
+import { parseSheetText } from '@/lib/claims/sheet-text';
 import type { Figure, Measurement } from '@/lib/engine/contract/measurement';
 import { Cancelled } from '@/lib/engine/contract/quantity';
 import { ENGINE_VERSION } from '@/lib/engine/version';
@@ -14,6 +15,7 @@ import { explainSheet, type Explained, type SearchEnd } from './explain/explain-
 import { measureOtherwise } from './explain/measure-otherwise';
 import { offeredReadings, type ReadingsByClaim } from './explain/offered-readings';
 import type { Weighed } from './explain/subject';
+import { keptGuesses, sheetGuesses } from './guesses/sheet-guesses';
 import { measureClaim, resolveInputs } from './measure-claim';
 import { readInputs, type Inputs } from './read-inputs';
 import type { FiguresByClaim, ResultClaim, ResultDocument } from './result';
@@ -61,11 +63,20 @@ export async function reproduceWith(catalogue: Catalogue, source: Source, option
   try {
     const files = new HashedFiles(source.openFile, options.digest);
     const inputs = await readInputs(sheet.value, files, fileProgress(sheet.value, options), source.readHdf5);
-    return inputs.ok ? measureAll(sheet.value, inputs.value, options) : inputs;
+    if (!inputs.ok) return inputs;
+    const measured = measureAll(sheet.value, inputs.value, options);
+    // A variation asks what a number would be, not what the files say.
+    return measured.ok && options.otherwise === undefined ? ok(withGuesses(measured.value, source, sheet.value, inputs.value)) : measured;
   } catch (thrown) {
     if (thrown instanceof Cancelled) return err([{ code: 'pipeline/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' }]);
     throw thrown;
   }
+}
+
+/** What is declared and what is assumed stands in the sheet as it was written, not in what was made of it. */
+function withGuesses(made: Reproduced, { sheetJson }: Source, sheet: ClaimSheet, inputs: Inputs): Reproduced {
+  const written = sheetJson instanceof Uint8Array ? parseSheetText(sheetJson) : ok(sheetJson);
+  return { ...made, result: { ...made.result, guesses: written.ok ? keptGuesses(sheetGuesses(written.value, sheet, inputs)) : [] } };
 }
 
 function fileProgress(sheet: ClaimSheet, options: ReproduceOptions): (doing: string) => void {

@@ -7,6 +7,7 @@ import type { Candidate, SearchOfClaim } from '@/lib/explain/candidate';
 import type { Total } from '@/lib/engine/budget/total';
 import type { Coverage } from '@/lib/verdicts/coverage';
 import type { VerdictWord } from '@/lib/verdicts/verdict';
+import type { SheetGuess } from './guesses/sheet-guess';
 
 /** `counterfoil-result/1`: what one run says about one sheet. Field names are the open contract. */
 export type { Claimed, Coverage, VerdictWord };
@@ -66,6 +67,8 @@ export interface ResultDocument {
   readonly title: string;
   readonly files: readonly { readonly name: string; readonly bytes: number; readonly sha256: string }[];
   readonly claims: readonly ResultClaim[];
+  /** What the files say of the words beside them; they move no number. Absent in results of earlier versions. */
+  readonly guesses?: readonly SheetGuess[];
 }
 
 /** Figures travel beside the result, keyed by claim id: they are for eyes, not for the record. */

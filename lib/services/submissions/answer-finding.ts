@@ -6,6 +6,9 @@ import type { Actor } from '@/lib/policy/actor';
 import { actOnSubmission } from '@/lib/services/act';
 import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { currentRevision } from '@/lib/services/files/add-file';
+import { GUESS_CODE } from '@/lib/pipeline/guesses/guess-state';
+import { asDraftSheet } from './draft-sheet';
+import { namesGuess } from './names-guess';
 import { LODGED_ALREADY } from './update-draft';
 
 export const findingAnswer = z.strictObject({
@@ -16,13 +19,19 @@ export const findingAnswer = z.strictObject({
 });
 export type FindingAnswerInput = z.output<typeof findingAnswer>;
 
-/** The authors' word on a finding of the latest check; an empty one takes it back. */
+/** The authors' word on a finding of the latest check, or on a guess that their browser or a check made; an empty one takes it back. */
 export function answerFinding(actor: Actor, submissionId: string, input: FindingAnswerInput): Promise<Outcome<null>> {
   return actOnSubmission({ actor, action: 'submission.edit', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
     const row = await currentRevision(tx, submissionId);
-    const run = row && (await findLatestRun(tx, row.id, 'check'));
     if (!row) return { ok: false, error: NOT_FOUND };
+    if (input.code.startsWith(GUESS_CODE)) {
+      if (!namesGuess(asDraftSheet(row.sheet, row), input)) return fail('conflict', 'The draft has nothing of that name to guess of. It may have been renamed; look at its waveforms and curves again.');
+      await writeAnswer(tx, grant, row.id, input, input.answer);
+      note({ answered: input.code, where: input.where });
+      return ok(null);
+    }
+    const run = await findLatestRun(tx, row.id, 'check');
     const found = run?.result?.claims.some((claim) => claim.findings.some((f) => f.code === input.code && f.where === input.where && f.text === input.text));
     if (!found) return fail('conflict', 'The latest check has no such finding. Look at its findings again; they may have changed with a later check.');
     await writeAnswer(tx, grant, row.id, input, input.answer);

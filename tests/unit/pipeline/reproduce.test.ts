@@ -67,7 +67,7 @@ async function refusals(...args: Parameters<typeof run>): Promise<string[]> {
 describe('a sheet walks from the hall to the weighing room', () => {
   it('and comes out as a result whose fields stand in their order', async () => {
     const { result } = await reproduced(sheet());
-    expect(Object.keys(result)).toEqual(['format', 'engine', 'title', 'files', 'claims']);
+    expect(Object.keys(result)).toEqual(['format', 'engine', 'title', 'files', 'claims', 'guesses']);
     expect(Object.keys(result.claims[0] ?? {})).toEqual(['id', 'quantity', 'unit', 'verdict', 'remarks', 'coverage', 'points', 'budget', 'uncertainty', 'metricBound', 'assumed', 'settings', 'routeB', 'findings', 'candidates']);
     expect(Object.keys(result.claims[0]?.points[0] ?? {})).toEqual(['at', 'claimed', 'printed', 'tolerance', 'value', 'expandedUncertainty', 'routes', 'apart', 'verdict']);
     expect(resultSchema.safeParse(result).error).toBeUndefined();
