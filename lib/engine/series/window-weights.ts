@@ -20,14 +20,25 @@ function correctKink(weights: Float64Array, grid: UniformGrid, t: number, order:
   for (let j = 0; j < order; j++) weights[from + j]! += share[j]! * jump(grid.t0 + (from + j) * grid.dt);
 }
 
-function correctEnds(weights: Float64Array, grid: UniformGrid, tEnd: number, order: number, plain: Float64Array): void {
+/** The taper of every sample, asked for on the ramps only. */
+function taperOn({ n, t0, dt }: UniformGrid, window: TaperWindow): Float64Array {
+  const weights = new Float64Array(n).fill(1);
+  const taperAt = (k: number): number => taperWeightAt(window, t0 + k * dt);
+  const { start, end } = window;
+  if (start !== null) for (let k = 0; k < n && t0 + k * dt < start.to; k++) weights[k] = taperAt(k);
+  if (end !== null) for (let k = n - 1; k >= 0 && t0 + k * dt > end.from; k--) weights[k] = taperAt(k);
+  return weights;
+}
+
+/** The first and the last `order` samples, which are not the same ones. */
+function correctEnds(weights: Float64Array, grid: UniformGrid, tEnd: number, order: number): void {
   const share = new Float64Array(order);
   edgeRule(order, 0).weightsAt(0, share);
-  for (let j = 0; j < order; j++) weights[j]! += share[j]! * plain[j]!;
+  for (let j = 0; j < order; j++) weights[j]! += share[j]! * weights[j]!;
   const last = grid.n - 1;
   const beyond = Math.max(0, (tEnd - grid.t0) / grid.dt - last);
   edgeRule(order, 0).weightsAt(beyond, share);
-  for (let j = 0; j < order; j++) weights[last - j]! += share[j]! * plain[last - j]!;
+  for (let j = 0; j < order; j++) weights[last - j]! += share[j]! * weights[last - j]!;
 }
 
 /**
@@ -40,11 +51,8 @@ function correctEnds(weights: Float64Array, grid: UniformGrid, tEnd: number, ord
  */
 export function windowWeights(grid: UniformGrid, tEnd: number, window: TaperWindow, wantedOrder: number): Float64Array {
   const order = Math.max(1, Math.min(wantedOrder, grid.n >> 1));
-  const plain = new Float64Array(grid.n);
-  if (window.start === null && window.end === null) plain.fill(1);
-  else for (let k = 0; k < grid.n; k++) plain[k] = taperWeightAt(window, grid.t0 + k * grid.dt);
-  const weights = plain.slice();
-  correctEnds(weights, grid, tEnd, order, plain);
+  const weights = taperOn(grid, window);
+  correctEnds(weights, grid, tEnd, order);
   const { start, end } = window;
   const rise = (t: number): number => (start === null ? 1 : continued((t - start.from) / (start.to - start.from)));
   const fall = (t: number): number => (end === null ? 1 : continued((end.to - t) / (end.to - end.from)));

@@ -1,3 +1,5 @@
+import type { PackedSide, Slopes } from './packed-side';
+
 /**
  * What a bound needs of a template: sums over blocks of bins, as wide in ln f as a step of the mass grid. With T = F dB/dF they give
  * ‖T − (iαk + iβ + γ)B‖² in any block for any α, β and γ.
@@ -20,18 +22,21 @@ export function blockEdges(first: number, last: number, width: number): Int32Arr
 }
 
 /**
- * Sums of one template.
- * Shape:  spectrum B and slope series S (T = i k S) from bin `first` on, interleaved; bins beyond them count as empty.
+ * Sums of one template over every `stride`-th of its bins, which are all that the words bin and k mean here.
+ * Shape:  slopes S (T = i k S) of those bins; bins beyond them count as empty.
  * Units:  those of the spectrum, squared; k in bins.
  * Error:  rounding.
  * Fails:  never.
  * Source: expansion of the square.
  */
-export function blockMoments(first: number, re: Float64Array, im: Float64Array, slopeRe: Float64Array, slopeIm: Float64Array, edges: Int32Array): BlockMoments {
+export function blockMoments(side: PackedSide, slopes: Slopes, stride: number, edges: Int32Array): BlockMoments {
+  const { re, im } = side;
+  const { re: slopeRe, im: slopeIm, first } = slopes;
   const blocks = edges.length - 1;
   const sums = new Float64Array(MOMENTS * blocks);
-  for (let j = 0; j < blocks; j++) {
-    const to = Math.min(edges[j + 1]!, first + re.length);
+  const end = first + slopeRe.length;
+  for (let j = 0; j < blocks && edges[j]! < end; j++) {
+    const to = Math.min(edges[j + 1]!, end);
     let p = 0;
     let kp = 0;
     let kkp = 0;
@@ -39,9 +44,9 @@ export function blockMoments(first: number, re: Float64Array, im: Float64Array, 
     let rt = 0;
     let it = 0;
     let kit = 0;
-    for (let k = edges[j]!; k < to; k++) {
-      const x = re[k - first]!;
-      const y = im[k - first]!;
+    for (let k = edges[j]!, i = k * stride - side.first; k < to; k++, i += stride) {
+      const x = re[i]!;
+      const y = im[i]!;
       const u = -k * slopeIm[k - first]!;
       const v = k * slopeRe[k - first]!;
       const power = x * x + y * y;
@@ -54,13 +59,14 @@ export function blockMoments(first: number, re: Float64Array, im: Float64Array, 
       it += turn;
       kit += k * turn;
     }
-    sums[MOMENTS * j] = p;
-    sums[MOMENTS * j + 1] = kp;
-    sums[MOMENTS * j + 2] = kkp;
-    sums[MOMENTS * j + 3] = tt;
-    sums[MOMENTS * j + 4] = rt;
-    sums[MOMENTS * j + 5] = it;
-    sums[MOMENTS * j + 6] = kit;
+    const o = MOMENTS * j;
+    sums[o] = p;
+    sums[o + 1] = kp;
+    sums[o + 2] = kkp;
+    sums[o + 3] = tt;
+    sums[o + 4] = rt;
+    sums[o + 5] = it;
+    sums[o + 6] = kit;
   }
   return { sums };
 }

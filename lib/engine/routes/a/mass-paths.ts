@@ -15,9 +15,28 @@ const ROOM = 1.002;
 /** Beyond a right angle nothing is bounded. */
 const MOST = Math.PI;
 
+/** 1/S of each step of the grid and each block, [step][block] flattened, at its largest and its smallest. */
 interface Weights {
   readonly sup: Float64Array;
   readonly inf: Float64Array;
+}
+
+function weightsOf(factors: readonly number[], edges: Int32Array, dfHz: (factor: number) => number, band: Band): Weights {
+  const range = noiseRange(band);
+  const blocks = edges.length - 1;
+  // Each bin stands for all frequencies nearer to it than to its neighbours.
+  const sides = Float64Array.from(edges, (bin) => Math.log(bin - 0.5));
+  const widths = factors.map((factor) => Math.log(dfHz(factor)));
+  const steps = factors.length - 1;
+  const [sup, inf] = [new Float64Array(steps * blocks), new Float64Array(steps * blocks)];
+  for (let g = 0; g < steps; g++) {
+    for (let j = 0; j < blocks; j++) {
+      const [from, to] = [sides[j]! + widths[g + 1]!, sides[j + 1]! + widths[g]!];
+      sup[g * blocks + j] = range.sup(from, to);
+      inf[g * blocks + j] = range.inf(from, to);
+    }
+  }
+  return { sup, inf };
 }
 
 interface Turn {
@@ -27,7 +46,7 @@ interface Turn {
 }
 
 /** The time, phase and size whose removal leaves least under given weights; any others give a bound as well. */
-function turnOf({ sums }: BlockMoments, weights: Float64Array, live: number): Turn {
+function turnOf({ sums }: BlockMoments, weights: Float64Array, at: number, live: number): Turn {
   let s0 = 0;
   let s1 = 0;
   let s2 = 0;
@@ -35,7 +54,7 @@ function turnOf({ sums }: BlockMoments, weights: Float64Array, live: number): Tu
   let it = 0;
   let kit = 0;
   for (let j = 0, o = 0; j < live; j++, o += MOMENTS) {
-    const w = weights[j]!;
+    const w = weights[at + j]!;
     s0 += w * sums[o]!;
     s1 += w * sums[o + 1]!;
     s2 += w * sums[o + 2]!;
@@ -57,6 +76,18 @@ function restOf({ sums }: BlockMoments, { alpha, beta, gamma }: Turn, rest: Floa
   }
 }
 
+/** Σ weights × values over the live blocks of one step. */
+function dot(weights: Float64Array, at: number, values: Float64Array, live: number): number {
+  // Two sums at once: one alone would wait for itself at every block.
+  let even = 0;
+  let odd = 0;
+  for (let j = 0; j + 1 < live; j += 2) {
+    even += weights[at + j]! * values[j]!;
+    odd += weights[at + j + 1]! * values[j + 1]!;
+  }
+  return live % 2 === 0 ? even + odd : even + odd + weights[at + live - 1]! * values[live - 1]!;
+}
+
 /**
  * Bounds of the angle between a template and itself at another mass.
  * Shape:  factors rising; edges of the blocks in bins; the bin width in Hz at a factor is dfHz(factor).
@@ -66,33 +97,20 @@ function restOf({ sums }: BlockMoments, { alpha, beta, gamma }: Turn, rest: Floa
  * Source: the length of a path bounds the distance of its ends; dB/d ln m = F dB/dF, less what a shift, a phase and a norm take up.
  */
 export function massPaths(factors: readonly number[], edges: Int32Array, dfHz: (factor: number) => number, band: Band): MassPaths {
-  const range = noiseRange(band);
+  const { sup, inf } = weightsOf(factors, edges, dfHz, band);
   const blocks = edges.length - 1;
-  const [starts, ends] = [edges.slice(0, -1), edges.slice(1)].map((bins, i) => Float64Array.from(bins, (bin) => Math.log(bin - i)));
-  const steps = factors.slice(1).map((factor, g): Weights => {
-    const [narrow, wide] = [Math.log(dfHz(factor)), Math.log(dfHz(factors[g]!))];
-    const ofBlock = (read: (from: number, to: number) => number) => starts!.map((start, j) => read(start + narrow, ends![j]! + wide));
-    return { sup: ofBlock(range.sup), inf: ofBlock(range.inf) };
-  });
+  const steps = factors.length - 1;
+  const widths = Float64Array.from({ length: steps }, (_, g) => ROOM * Math.log(factors[g + 1]! / factors[g]!));
   const [rest, power] = [new Float64Array(blocks), new Float64Array(blocks)];
-  const angleOf = ({ sup, inf }: Weights, live: number): number => {
-    let moved = 0;
-    let held = 0;
-    for (let j = 0; j < live; j++) {
-      moved += sup[j]! * rest[j]!;
-      held += inf[j]! * power[j]!;
-    }
-    return ROOM * Math.sqrt(moved / held);
-  };
   return {
     of: (moments) => {
       for (let j = 0; j < blocks; j++) power[j] = moments.sums[MOMENTS * j]!;
       let live = blocks;
       while (live > 0 && power[live - 1] === 0) live--;
       const angles = new Float64Array(factors.length);
-      for (let g = 0; g < steps.length; g++) {
-        if (g % STEPS_SERVED === 0) restOf(moments, turnOf(moments, steps[Math.min(steps.length - 1, g + STEPS_SERVED / 2)]!.inf, live), rest, live);
-        const angle = angleOf(steps[g]!, live) * Math.log(factors[g + 1]! / factors[g]!);
+      for (let g = 0; g < steps; g++) {
+        if (g % STEPS_SERVED === 0) restOf(moments, turnOf(moments, inf, blocks * Math.min(steps - 1, g + STEPS_SERVED / 2), live), rest, live);
+        const angle = widths[g]! * Math.sqrt(dot(sup, g * blocks, rest, live) / dot(inf, g * blocks, power, live));
         angles[g + 1] = angles[g]! + (angle < MOST ? angle : MOST);
       }
       return angles;

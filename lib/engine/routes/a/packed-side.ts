@@ -1,26 +1,25 @@
 import type { Band, Side } from '@/lib/engine/contract/route';
 import type { Response } from '@/lib/engine/contract/settings';
-import { powerOfTwoFrom, transformOfSize } from '@/lib/engine/fourier/transform';
-import { zoomTransform } from '@/lib/engine/fourier/zoom-transform';
 import { windowWeights } from '@/lib/engine/series/window-weights';
 import type { Numerics } from './numerics';
 import { gridFor } from './side-spectra';
 import { derivativeOrder } from './spectrum';
 import type { SpectrumStore } from './spectrum-store';
+import { seriesBins, type SeriesBins } from './series-bins';
+import type { Polarisations } from './time-source';
 
 /** The bins of one real response that a band can ask for, and nothing else: a bank holds hundreds. */
 export interface PackedSide {
   readonly first: number;
   readonly re: Float64Array;
   readonly im: Float64Array;
-  /** |·|² of each bin. */
-  readonly power: Float64Array;
 }
 
-/** With S of each bin, where F dB/dF = i k S but for a turn that grows with frequency. */
-export interface SlopedSide extends PackedSide {
-  readonly slopeRe: Float64Array;
-  readonly slopeIm: Float64Array;
+/** Every so-manieth bin's S, where F dB/dF = i k S but for a turn that grows with frequency; k counts these bins alone. */
+export interface Slopes {
+  readonly first: number;
+  readonly re: Float64Array;
+  readonly im: Float64Array;
 }
 
 export interface Packing {
@@ -45,14 +44,8 @@ export interface ResponseSeries {
   readonly order: number;
 }
 
-/** F₊h₊ + F×h× where z = h₊ − ih×, times the window, in place. */
-function toResponse(re: Float64Array, im: Float64Array | null, weights: Float64Array, response: Packing['response']): Float64Array {
-  const { plus, cross } = response === 'plus' ? { plus: 1, cross: 0 } : response === 'cross' ? { plus: 0, cross: 1 } : response;
-  const out = new Float64Array(re.length);
-  if (im === null || cross === 0) for (let k = 0; k < out.length; k++) out[k] = plus * re[k]! * weights[k]!;
-  else for (let k = 0; k < out.length; k++) out[k] = (plus * re[k]! - cross * im[k]!) * weights[k]!;
-  return out;
-}
+const polarisations = (response: Packing['response']): Polarisations =>
+  response === 'plus' ? { plus: 1, cross: 0 } : response === 'cross' ? { plus: 0, cross: 1 } : response;
 
 function peakOf(values: Float64Array): number {
   let [at, top] = [0, -1];
@@ -74,118 +67,78 @@ function peakOf(values: Float64Array): number {
 export function responseSeries(side: Side, dF: number, { response, store, numerics }: Omit<Packing, 'band'>): ResponseSeries {
   const source = store.time(side.waveform);
   const grid = gridFor(side, store, numerics, dF);
-  const { re, im } = source.lineOfSight(grid, numerics.interpolationOrder, side.inclinationRad, side.azimuthRad);
-  const values = toResponse(re, im, windowWeights(grid, grid.tEnd, side.taper, numerics.edgeOrder), response);
+  const values = source.response(grid, numerics.interpolationOrder, side.inclinationRad, side.azimuthRad, polarisations(response));
+  const weights = windowWeights(grid, grid.tEnd, side.taper, numerics.edgeOrder);
+  for (let k = 0; k < values.length; k++) values[k]! *= weights[k]!;
   return { values, dt: grid.dt, origin: peakOf(values), top: Math.min(source.nyquist, 0.5 / grid.dt), order: derivativeOrder(side.waveform.variable) };
 }
 
-/** Buffers of the last size: the records of a bank mostly ask for the same. */
-let scratch: { readonly data: Float64Array; readonly out: Float64Array } | null = null;
-function scratchOf(size: number): { readonly data: Float64Array; readonly out: Float64Array } {
-  if (scratch?.data.length !== 2 * size) scratch = { data: new Float64Array(2 * size), out: new Float64Array(2 * size) };
-  return scratch;
-}
-
-/** Size of the transform whose bins are exactly dF wide, or 0. */
-export function sizeFor({ values, dt }: ResponseSeries, dF: number): number {
-  const theta = dF * dt;
-  const size = powerOfTwoFrom(Math.max(2, Math.round(1 / theta)));
-  return Math.abs(size * theta - 1) < 1e-12 && size >= values.length ? size : 0;
-}
-
-/** Where the bins of x + iy stand at f and at −f: bin first + k at plusAt + 2k and minusAt − 2k. */
-interface PairBins {
-  readonly plus: Float64Array;
-  readonly plusAt: number;
-  readonly minus: Float64Array;
-  readonly minusAt: number;
-}
-
-/** One transform of the series and, as an imaginary part, of it times `turn` and the time. */
-function pairBins(series: ResponseSeries, turn: number, dF: number, first: number, bins: number): PairBins {
-  const { values, origin } = series;
-  const n = values.length;
-  const size = sizeFor(series, dF);
-  if (size === 0) {
-    const samples = new Float64Array(2 * n);
-    for (let j = 0; j < n; j++) {
-      samples[2 * j] = values[j]!;
-      samples[2 * j + 1] = turn * (j - origin) * values[j]!;
-    }
-    const zoom = (from: number): Float64Array => zoomTransform({ samples, firstIndex: -origin, theta: dF * series.dt, firstBin: from, bins });
-    return { plus: zoom(first), plusAt: 0, minus: zoom(1 - first - bins), minusAt: 2 * (bins - 1) };
+/** Division by (2πf)^n turns news or ψ₄ into strain; the common i^n is a phase. */
+function toStrain(order: number, first: number, step: number, n: number, re: Float64Array, im: Float64Array): void {
+  if (order === 0) return;
+  for (let i = 0; i < n; i++) {
+    const scale = (first + i * step) ** -order;
+    re[i]! *= scale;
+    im[i]! *= scale;
   }
-  const { data, out } = scratchOf(size);
-  data.fill(0, 2 * (n - origin), 2 * (size - origin));
-  for (let j = 0, at = 2 * (size - origin); j < n; j++, at += 2) {
-    if (j === origin) at = 0;
-    const x = values[j]!;
-    data[at] = x;
-    data[at + 1] = turn * (j - origin) * x;
-  }
-  transformOfSize(size).forward(out, data);
-  return { plus: out, plusAt: 2 * first, minus: out, minusAt: 2 * (size - first) };
 }
 
-let powers = new Float64Array(0);
+const looked = { re: new Float64Array(0), im: new Float64Array(0) };
+/** Numbers that the next call overwrites. */
+function lookedAt(bins: SeriesBins, order: number, first: number, step: number, n: number): typeof looked {
+  if (looked.re.length < n) [looked.re, looked.im] = [new Float64Array(2 * n), new Float64Array(2 * n)];
+  bins.read(first, step, n, looked.re, looked.im);
+  toStrain(order, first, step, n, looked.re, looked.im);
+  return looked;
+}
 
-/** How many bins hold all but UNSEEN of the weighed power of x. */
-function liveBins({ plus, plusAt, minus, minusAt }: PairBins, scaleAt: (k: number) => number, weights: Float64Array, bins: number): number {
-  if (powers.length < bins) powers = new Float64Array(bins);
+/** How many bins hold all but UNSEEN of the weighed power; every `stride`-th of them shows it. */
+function liveBins(bins: SeriesBins, order: number, first: number, stride: number, weights: Float64Array, most: number): number {
+  const n = Math.ceil(most / stride);
+  const { re, im } = lookedAt(bins, order, first, stride, n);
   let total = 0;
-  for (let k = 0; k < bins; k++) {
-    const x = plus[plusAt + 2 * k]! + minus[minusAt - 2 * k]!;
-    const y = plus[plusAt + 2 * k + 1]! - minus[minusAt - 2 * k + 1]!;
-    const scale = scaleAt(k);
-    total += powers[k] = weights[k]! * scale * scale * (x * x + y * y);
-  }
-  let n = bins;
-  for (let left = 0; n > 0 && (left += powers[n - 1]!) < UNSEEN * total; ) n--;
-  return n;
+  for (let i = 0; i < n; i++) total += re[i] = weights[i * stride]! * (re[i]! * re[i]! + im[i]! * im[i]!);
+  let live = n;
+  for (let left = 0; live > 0 && (left += re[live - 1]!) < UNSEEN * total; ) live--;
+  return Math.min(most, live * stride);
 }
-
-const empty = (first: number): SlopedSide => {
-  const none = new Float64Array(0);
-  return { first, re: none, im: none, power: none, slopeRe: none, slopeIm: none };
-};
 
 /**
  * Bins of a template from `first` on, one for each of the weights that tell where its content ends for a band, less those above that.
- * Shape:  re, im and power of their own; the slopes stand in buffers that the next call overwrites.
+ * Shape:  re and im of their own. Every `stride`-th bin alone must tell the record's length apart.
  * Units:  those of the series, less dt: matches do not see a factor.
  * Error:  rounding; the end of the content to 1e-8 of the weighed power.
  * Fails:  never.
- * Source: F dB/dF is the transform of −2πi t b(t), times F.
+ * Source: definition.
  */
-export function slopedSide(series: ResponseSeries, dF: number, first: number, weights: Float64Array): SlopedSide {
-  const bins = Math.max(0, Math.min(weights.length, Math.floor(series.top / dF) - first + 1));
-  if (bins === 0) return empty(first);
-  const pairs = pairBins(series, -2 * Math.PI * series.dt * dF, dF, first, bins);
-  // Division by (2πf)^n turns news or ψ₄ into strain; the common i^n is a phase.
-  const scaleAt = series.order === 0 ? () => 1 : (k: number) => (first + k) ** -series.order;
-  return separated(pairs, scaleAt, first, liveBins(pairs, scaleAt, weights, bins));
+export function packedSide(series: ResponseSeries, dF: number, first: number, stride: number, weights: Float64Array): PackedSide {
+  const most = Math.max(0, Math.min(weights.length, Math.floor(series.top / dF) - first + 1));
+  if (most === 0) return { first, re: new Float64Array(0), im: new Float64Array(0) };
+  const bins = seriesBins(series.values, series, dF, first, most);
+  const n = liveBins(bins, series.order, first, stride, weights, Math.min(most, bins.last - first + 1));
+  const [re, im] = [new Float64Array(n), new Float64Array(n)];
+  bins.read(first, 1, n, re, im);
+  toStrain(series.order, first, 1, n, re, im);
+  return { first, re, im };
 }
 
-const slopes = { re: new Float64Array(0), im: new Float64Array(0) };
+let timed = new Float64Array(0);
 
-/** Spectra of x and y from those of x + iy. */
-function separated({ plus, plusAt, minus, minusAt }: PairBins, scaleAt: (k: number) => number, first: number, n: number): SlopedSide {
-  const [re, im, power] = [new Float64Array(n), new Float64Array(n), new Float64Array(n)];
-  if (slopes.re.length < n) [slopes.re, slopes.im] = [new Float64Array(2 * n), new Float64Array(2 * n)];
-  const [slopeRe, slopeIm] = [slopes.re.subarray(0, n), slopes.im.subarray(0, n)];
-  for (let k = 0; k < n; k++) {
-    const half = 0.5 * scaleAt(k);
-    const a = plus[plusAt + 2 * k]!;
-    const b = plus[plusAt + 2 * k + 1]!;
-    const c = minus[minusAt - 2 * k]!;
-    const d = minus[minusAt - 2 * k + 1]!;
-    const x = half * (a + c);
-    const y = half * (b - d);
-    re[k] = x;
-    im[k] = y;
-    power[k] = x * x + y * y;
-    slopeRe[k] = half * (b + d);
-    slopeIm[k] = half * (c - a);
-  }
-  return { first, re, im, power, slopeRe, slopeIm };
+/**
+ * The slopes of a packed side, for bounds of how fast a mass moves it.
+ * Shape:  bins `stride` times as wide, within those of the side; buffers that the next call overwrites.
+ * Units:  those of the side.
+ * Error:  rounding.
+ * Fails:  never.
+ * Source: F dB/dF is the transform of −2πi t b(t), times F.
+ */
+export function slopesOf(series: ResponseSeries, { first: from, re }: PackedSide, dF: number, stride: number): Slopes {
+  const first = Math.ceil(from / stride);
+  const n = Math.max(0, Math.floor((from + re.length - 1) / stride) - first + 1);
+  const { values, origin, dt, order } = series;
+  if (timed.length !== values.length) timed = new Float64Array(values.length);
+  const turn = -2 * Math.PI * dt * dF * stride;
+  for (let j = 0; j < values.length; j++) timed[j] = turn * (j - origin) * values[j]!;
+  if (n > 0) lookedAt(seriesBins(timed, series, dF * stride, first, n), order, first, 1, n);
+  return { first, re: looked.re.subarray(0, n), im: looked.im.subarray(0, n) };
 }

@@ -34,11 +34,13 @@ function scratchOf(size: number): Scratch {
 
 /** Σ V|b|² of bins outside the core, and Σ |V| |b|²: end weights change their sign. */
 const rim = { signed: 0, sized: 0 };
-function addRim(weights: Float64Array, power: Float64Array, shift: number, from: number, to: number): void {
+function addRim(weights: Float64Array, { re, im }: PackedSide, shift: number, from: number, to: number): void {
   let signed = 0;
   let sized = 0;
   for (let i = from; i < to; i++) {
-    const v = weights[i]! * power[i - shift]!;
+    const x = re[i - shift]!;
+    const y = im[i - shift]!;
+    const v = weights[i]! * (x * x + y * y);
     signed += v;
     sized += Math.abs(v);
   }
@@ -136,8 +138,8 @@ export function matchBounds(slice: MassSlice, template: PackedSide): MatchBounds
   const shift = template.first - first;
   rim.signed = 0;
   rim.sized = 0;
-  addRim(values, template.power, shift, low - first, from - first);
-  addRim(values, template.power, shift, from + n - first, high - first);
+  addRim(values, template, shift, low - first, from - first);
+  addRim(values, template, shift, from + n - first, high - first);
   const norm = product.inside + rim.signed;
   const norms = Math.sqrt(slice.norm * norm);
   if (!(norms > 0)) return { least: 0, most: 0 };

@@ -1,10 +1,10 @@
-import type { Side, TemplateRequest } from '@/lib/engine/contract/route';
+import type { Band, Side, TemplateRequest } from '@/lib/engine/contract/route';
 import type { Response } from '@/lib/engine/contract/settings';
 import { binWeights, type BinWeights } from './bin-weights';
 import { blockEdges, blockMoments } from './block-moments';
 import { massPaths } from './mass-paths';
 import type { Numerics } from './numerics';
-import { responseSeries, slopedSide, type PackedSide } from './packed-side';
+import { packedSide, responseSeries, slopesOf, type PackedSide, type ResponseSeries } from './packed-side';
 import type { SpectrumStore } from './spectrum-store';
 import { templateFrame } from './template-frame';
 
@@ -33,18 +33,17 @@ const MOST_KEPT = 1 << 22;
  * Transforms every template once.
  * Shape:  time-domain sides in one real response; factors rising.
  * Units:  Hz; rad.
- * Error:  as `slopedSide`; paths are bounds.
+ * Error:  as `packedSide`; paths are bounds.
  * Fails:  never.
  * Source: engine design: spectra of all templates in memory.
  */
 export function templateBank({ signals, factors, request, store, numerics }: BankRequest): TemplateBank {
   const { templates: sides, band, response } = request;
-  const dfHz = templateFrame(signals, sides, factors, store, numerics);
+  const { dfHz, stride } = templateFrame(signals, sides, factors, store, numerics);
   const lowest = Math.max(1, Math.floor(band.fLowHz / dfHz(factors[0]!)) - numerics.edgeOrder);
-  const highest = Math.ceil(band.fHighHz / dfHz(factors[factors.length - 1]!)) + numerics.edgeOrder;
-  const width = factors.length > 1 ? Math.log(factors[1]! / factors[0]!) : 1;
-  const edges = blockEdges(lowest, highest, width);
-  const { of: pathsOf } = massPaths(factors, edges, dfHz, band);
+  const wanted = Math.ceil(band.fHighHz / dfHz(factors[factors.length - 1]!)) + numerics.edgeOrder;
+  const highest = Math.max(lowest, Math.min(nyquistBin(sides, dfHz(1), store), wanted));
+  const pathOf = factors.length > 1 ? pathsOn(lowest, highest, stride, dfHz, factors, band) : null;
   const weightsFor = (last: number) => weightsBy(request, dfHz, lowest, last, store, numerics);
   const tail = tailWeights(lowest, highest, factors, weightsFor(highest));
   const templates: PackedSide[] = [];
@@ -52,12 +51,26 @@ export function templateBank({ signals, factors, request, store, numerics }: Ban
   for (const [i, side] of sides.entries()) {
     request.onStep?.(i / (2 * sides.length));
     const dF = Number((dfHz(1) * side.secondsPerUnit).toPrecision(14));
-    const { slopeRe, slopeIm, ...packed } = slopedSide(responseSeries(side, dF, { response, store, numerics }), dF, lowest, tail);
+    const series = responseSeries(side, dF, { response, store, numerics });
+    const packed = packedSide(series, dF, lowest, stride, tail);
     templates.push(packed);
-    paths.push(factors.length > 1 ? pathsOf(blockMoments(packed.first, packed.re, packed.im, slopeRe, slopeIm, edges)) : new Float64Array(1));
+    paths.push(pathOf === null ? new Float64Array(1) : pathOf(series, packed, dF));
   }
   const last = Math.min(highest, Math.max(...templates.map(({ first, re }) => first + re.length - 1)));
   return { templates, paths, dfHz, weightsAt: weightsFor(last) };
+}
+
+/** No record holds content above it. */
+const nyquistBin = (sides: readonly Side[], dfHz: number, store: SpectrumStore): number =>
+  Math.ceil(Math.max(...sides.map(({ waveform, secondsPerUnit }) => store.time(waveform).nyquist / secondsPerUnit)) / dfHz);
+
+type PathOf = (series: ResponseSeries, packed: PackedSide, dF: number) => Float64Array;
+
+/** Lengths of paths, from every `stride`-th bin: they are integrals over spectra whose records those bins tell apart. */
+function pathsOn(lowest: number, highest: number, stride: number, dfHz: TemplateBank['dfHz'], factors: readonly number[], band: Band): PathOf {
+  const edges = blockEdges(Math.ceil(lowest / stride), Math.floor(highest / stride), Math.log(factors[1]! / factors[0]!));
+  const { of: pathsOf } = massPaths(factors, edges, (factor) => stride * dfHz(factor), band);
+  return (series, packed, dF) => pathsOf(blockMoments(packed, slopesOf(series, packed, dF, stride), stride, edges));
 }
 
 /** Signals fall as this power of the frequency, before they end. */
@@ -66,10 +79,13 @@ const INSPIRAL = -7 / 3;
 /** 1/S at the first, the middle and the last mass, each as large as an inspiral makes it. */
 function tailWeights(lowest: number, highest: number, factors: readonly number[], weightsAt: TemplateBank['weightsAt']): Float64Array {
   const out = new Float64Array(highest - lowest + 1);
+  const inspiral = out.map((_, i) => (lowest + i) ** INSPIRAL);
   for (const g of new Set([0, factors.length >> 1, factors.length - 1])) {
     const { first, values } = weightsAt(factors[g]!);
-    const total = values.reduce((sum, v, i) => sum + v * (first + i) ** INSPIRAL, 0);
-    for (let i = 0; i < values.length; i++) out[first + i - lowest]! += Math.max(0, values[i]!) / total;
+    const from = first - lowest;
+    let total = 0;
+    for (let i = 0; i < values.length; i++) total += values[i]! * inspiral[from + i]!;
+    for (let i = 0; i < values.length; i++) out[from + i]! += Math.max(0, values[i]!) / total;
   }
   return out;
 }

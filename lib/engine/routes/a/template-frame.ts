@@ -17,17 +17,27 @@ function fitted(period: number, side: Side, store: SpectrumStore, numerics: Nume
   return 1 / (step * powerOfTwoFrom(Math.ceil(period / step - 1e-9)));
 }
 
+export interface TemplateFrame {
+  /** Width of a bin at a factor on the templates' mass. */
+  readonly dfHz: (factor: number) => number;
+  /** A power of two; every so-manieth bin alone still tells apart the record of any template. */
+  readonly stride: number;
+}
+
 /**
- * Width of the bins at a factor on the templates' mass, so fine that no lag of any pair at any factor is taken for another. In bins
- * every template stands still: a factor moves the signal and the noise.
+ * Bins so fine that no lag of any pair at any factor is taken for another. In bins every template stands still: a factor moves
+ * the signal and the noise.
  * Shape:  time-domain sides; factors rising.
  * Units:  Hz.
  * Error:  none of its own.
  * Fails:  never.
  * Source: a product over a finite lag is told apart by bins of 1/lag.
  */
-export function templateFrame(signals: readonly Side[], templates: readonly Side[], factors: readonly number[], store: SpectrumStore, numerics: Numerics): (factor: number) => number {
+export function templateFrame(signals: readonly Side[], templates: readonly Side[], factors: readonly number[], store: SpectrumStore, numerics: Numerics): TemplateFrame {
   const longest = (sides: readonly Side[]): number => Math.max(...sides.map((side) => spanS(side, store)));
-  const df = fitted(LAG_ROOM * (longest(signals) / factors[0]! + longest(templates)), templates[0]!, store, numerics);
-  return (factor) => df / factor;
+  const span = longest(templates);
+  const df = fitted(LAG_ROOM * (longest(signals) / factors[0]! + span), templates[0]!, store, numerics);
+  let stride = 1;
+  while (2 * stride * df * span * LAG_ROOM <= 1) stride *= 2;
+  return { dfHz: (factor) => df / factor, stride };
 }

@@ -21,11 +21,11 @@ const MOST_KEPT = 1 << 22;
 
 const LOOKS_A_STEP = 256;
 
-function normOf({ first: lowest, values }: MassSlice['weights'], { first, power }: PackedSide): number {
+function normOf({ first: lowest, values }: MassSlice['weights'], { first, re, im }: PackedSide): number {
   const from = Math.max(first, lowest);
-  const to = Math.min(first + power.length, lowest + values.length);
+  const to = Math.min(first + re.length, lowest + values.length);
   let sum = 0;
-  for (let k = from; k < to; k++) sum += values[k - lowest]! * power[k - first]!;
+  for (let k = from; k < to; k++) sum += values[k - lowest]! * (re[k - first]! ** 2 + im[k - first]! ** 2);
   return sum;
 }
 

@@ -17,6 +17,11 @@ export interface Samples {
   readonly im: Float64Array | null;
 }
 
+export interface Polarisations {
+  readonly plus: number;
+  readonly cross: number;
+}
+
 /** What route A knows of one time-domain record, computed once. */
 export interface TimeSource {
   readonly waveform: Waveform;
@@ -26,6 +31,8 @@ export interface TimeSource {
   readonly nyquist: number;
   /** Largest |dh/dt| over 2π times the peak: about the frequency where the signal is strongest. */
   readonly fastest: number;
+  /** plus·h₊ + cross·h× alone, of a bank that needs no other response. */
+  readonly response: (grid: SampleGrid, order: number, inclinationRad: number, azimuthRad: number, of: Polarisations) => Float64Array;
   readonly lineOfSight: (grid: SampleGrid, order: number, inclinationRad: number, azimuthRad: number) => Samples;
   readonly mode: (grid: SampleGrid, order: number, index: number) => Samples;
 }
@@ -70,6 +77,12 @@ function addTimes({ re, im }: ComplexSeries, part: ComplexSeries, { re: c, im: s
     re[k]! += c * a - s * b;
     im[k]! += c * b + s * a;
   }
+}
+
+/** Adds c·re + s·im. */
+function addReal(sum: Float64Array, { re, im }: ComplexSeries, c: number, s: number): void {
+  if (s === 0) for (let k = 0; k < sum.length; k++) sum[k]! += c * re[k]!;
+  else for (let k = 0; k < sum.length; k++) sum[k]! += c * re[k]! + s * im[k]!;
 }
 
 /** Partners by the mirror rule turn alike: one survey tells of both. */
@@ -129,12 +142,23 @@ export function timeSource(waveform: Waveform): TimeSource {
     });
     return sum;
   };
+  const response: TimeSource['response'] = (grid, order, inclinationRad, azimuthRad, { plus, cross }) => {
+    const sum = new Float64Array(grid.n);
+    parts.forEach((part, index) => {
+      const y = angular ? spinWeightedHarmonic(part.l, part.m, inclinationRad, azimuthRad) : { re: 1, im: 0 };
+      // z = h₊ − ih×, so that plus·h₊ + cross·h× is the real part of (plus + i·cross) z.
+      const [c, s] = [plus * y.re - cross * y.im, real ? 0 : -(plus * y.im + cross * y.re)];
+      if (c !== 0 || s !== 0) addReal(sum, partOn(grid, order, index), c, s);
+    });
+    return sum;
+  };
   return {
     waveform,
     axis,
     span: axis[axis.length - 1]! - axis[0]!,
     nyquist: nyquistFrequency(waveform),
     fastest: Math.max(0, ...(real ? parts.map((part) => fastestOfReal(axis, part.re)) : surveys.map(({ fastest }) => fastest))),
+    response,
     lineOfSight,
     mode: partOn,
   };
