@@ -1,6 +1,7 @@
 import type { Claim, ClaimSheet } from '@/lib/claims/claim';
 import type { Measurement } from '@/lib/engine/contract/measurement';
 import type { QuantityInputs, Watch } from '@/lib/engine/contract/quantity';
+import { sweepFigure } from '@/lib/engine/quantities/sweep-figure';
 import type { Flip } from '@/lib/explain/flip';
 import { flipsOf } from '@/lib/explain/flips/flips-of';
 import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
@@ -34,7 +35,14 @@ export function measureOtherwise(claim: Claim, sheet: ClaimSheet, inputs: Inputs
   const { change, to } = edited.value;
   const measured = remeasured(claim, { sheet, inputs, change, to }, extent, watch);
   const factors = flips.value.flatMap((flip) => (flip.change.kind === 'factor' ? [flip.change.factor] : []));
-  return ok(timesFactors(measured, factors));
+  return ok(withSweep(timesFactors(measured, factors), claim, extent));
+}
+
+/** All points at the places of the author; curves of one place are of the number before its factor. */
+function withSweep(measurement: Measurement, { id, quantity, settings, over, claimed }: Claim, { withFigures }: Extent): Measurement {
+  if (!withFigures || over === null) return measurement;
+  const request = { claimId: id, inputs: { of: {}, noise: null }, settings, over, claimed: claimed.map((entry) => (entry.kind === 'value' ? entry.value : null)), withFigures };
+  return { ...measurement, figures: [...measurement.figures.filter(({ kind }) => kind !== 'sweep'), ...sweepFigure(quantity, request, measurement.points)] };
 }
 
 /** The readings by their names, as this claim with its present settings has them. */

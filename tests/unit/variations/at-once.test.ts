@@ -5,6 +5,7 @@ import type { AskedChanges } from '@/lib/services/variations/changes';
 import type { DraftSheet } from '@/lib/services/submissions/submission-view';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import { burstFiles, burstSheet } from '../../support/burst-sheet';
+import { turningBurst } from '../../support/turning-burst';
 import { ofQuantity, oneClaim, run, runClaim, type SheetClaim } from '../../support/specimen-claim';
 
 const asItStands = (claim: SheetClaim): SheetClaim => claim;
@@ -35,17 +36,10 @@ const inMemory = async (sheet: DraftSheet, files: Readonly<Record<string, string
 /** Two short bursts in white noise. */
 const bursts = (change: (claim: SheetClaim) => SheetClaim) => inMemory(burstSheet(), burstFiles(), change);
 
-/** A burst that turns: the (2,2) mode of a source with a mass and a distance. */
-function turning(change: (claim: SheetClaim) => SheetClaim): Promise<ResultClaim> {
-  const rows = Array.from({ length: 4096 }, (_, i) => {
-    const t = (i - 2048) / 4096;
-    const [height, turned] = [1e-21 * Math.exp(-(t ** 2) / (2 * 0.01 ** 2)), -2 * Math.PI * 150 * t];
-    return `${t.toFixed(9)} ${(height * Math.cos(turned)).toExponential(12)} ${(height * Math.sin(turned)).toExponential(12)}`;
-  });
-  const A = { file: 'a.txt', domain: 'time', variable: 'strain', columns: ['t', 're', 'im'], mode: [2, 2], timeUnit: 's', amplitudeUnit: 'strain', totalMassMsun: 60, distanceMpc: 400 };
-  const sheet = burstSheet();
-  return inMemory({ ...sheet, waveforms: { A } }, { ...burstFiles(), 'a.txt': `${rows.join('\n')}\n` }, change);
-}
+const turning = (change: (claim: SheetClaim) => SheetClaim): Promise<ResultClaim> => {
+  const { sheet, files } = turningBurst('s', burstSheet().claims[0] ?? {});
+  return inMemory(sheet, files, change);
+};
 
 describe('a number told at once is what a rerun of the engine gives, U included', () => {
   const inSpace = { fLowHz: 10, fHighHz: 1900, taper: 'none', totalMassMsun: 60, distanceMpc: 400 };
