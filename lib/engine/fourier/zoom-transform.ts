@@ -12,19 +12,25 @@ export interface ZoomRequest {
 
 const SPLITTER = 134217729;
 
-/** θ·m²/2 modulo 1, exact to rounding although m² θ reaches 10⁷ cycles: the product is split as by Dekker. */
-function chirpCycles(theta: number, m: number): number {
-  const square = m * m;
-  const product = theta * square;
+/** θ·p/2 modulo 1, exact to rounding although p θ reaches 10⁷ cycles: the product is split as by Dekker. */
+function halfCycles(theta: number, p: number): number {
+  const product = theta * p;
   const a = SPLITTER * theta;
   const aHigh = a - (a - theta);
   const aLow = theta - aHigh;
-  const b = SPLITTER * square;
-  const bHigh = b - (b - square);
-  const bLow = square - bHigh;
+  const b = SPLITTER * p;
+  const bHigh = b - (b - p);
+  const bLow = p - bHigh;
   const remainder = aLow * bLow - (product - aHigh * bHigh - aLow * bHigh - aHigh * bLow);
   const whole = product - 2 * Math.floor(product / 2);
   return (whole + remainder) / 2;
+}
+
+/** Writes e^{iπθp} times a sign of the exponent. */
+function putTurn(into: Float64Array, at: number, theta: number, p: number, sign: 1 | -1): void {
+  const angle = 2 * Math.PI * halfCycles(theta, p);
+  into[at] = Math.cos(angle);
+  into[at + 1] = sign * Math.sin(angle);
 }
 
 const multiplyInto = (target: Float64Array, by: Float64Array, n: number): void => {
@@ -36,16 +42,33 @@ const multiplyInto = (target: Float64Array, by: Float64Array, n: number): void =
   }
 };
 
-/** e^{+iπθm²} laid out so that a circular convolution reaches all k − j. */
-function convolutionKernel(size: number, theta: number, lowest: number, highest: number): Float64Array {
-  const kernel = new Float64Array(2 * size);
-  for (let m = lowest; m <= highest; m++) {
-    const angle = 2 * Math.PI * chirpCycles(theta, m);
-    const at = 2 * (((m % size) + size) % size);
-    kernel[at] = Math.cos(angle);
-    kernel[at + 1] = Math.sin(angle);
+/** A turn of a bin costs as much as so many steps of a transform. */
+const TURN_COST = 8;
+
+/** How long the transforms are: one for all bins, or shorter ones for as many bins as each has room for. */
+function sizeFor(n: number, bins: number): number {
+  let [best, least] = [0, Infinity];
+  for (let size = powerOfTwoFrom(n + 1); ; size *= 2) {
+    const room = size - n + 1;
+    const rounds = Math.ceil(bins / room);
+    const cost = (1 + 2 * rounds) * size * Math.log2(size) + TURN_COST * ((1 + rounds) * n + 2 * Math.min(room, bins));
+    if (cost < least) [best, least] = [size, cost];
+    if (rounds === 1) return best;
   }
-  return kernel;
+}
+
+/** The transform of e^{+iπθm²}, laid out so that a circular convolution reaches all m = b − i. */
+function kernelOf(size: number, theta: number, n: number, room: number): Float64Array {
+  const [kernel, out] = [new Float64Array(2 * size), new Float64Array(2 * size)];
+  for (let m = 0; m < Math.max(n, room); m++) {
+    putTurn(kernel, m < room ? 2 * m : 2 * (size - m), theta, m * m, 1);
+    if (m > 0 && m < room && m < n) {
+      kernel[2 * (size - m)] = kernel[2 * m]!;
+      kernel[2 * (size - m) + 1] = kernel[2 * m + 1]!;
+    }
+  }
+  transformOfSize(size).forward(out, kernel);
+  return out;
 }
 
 /**
@@ -54,40 +77,30 @@ function convolutionKernel(size: number, theta: number, lowest: number, highest:
  * Units:  none; a sum, not an integral.
  * Error:  relative about 1e-14 of the largest bin.
  * Fails:  never.
- * Source: Bluestein 1970 (from memory): kj = [k² + j² − (k−j)²]/2 makes the sum a convolution.
+ * Source: Bluestein 1970 (from memory): bi = [b² + i² − (b−i)²]/2 makes the sum a convolution; runs of bins share its kernel.
  */
-export function zoomTransform(request: ZoomRequest): Float64Array {
-  const { samples, firstIndex, theta, firstBin, bins } = request;
+export function zoomTransform({ samples, firstIndex, theta, firstBin, bins }: ZoomRequest): Float64Array {
   const n = samples.length / 2;
-  const size = powerOfTwoFrom(n + bins);
+  const size = sizeFor(n, bins);
+  const room = Math.min(bins, size - n + 1);
   const fft = transformOfSize(size);
-  const data = new Float64Array(2 * size);
-  for (let i = 0; i < n; i++) {
-    const angle = -2 * Math.PI * chirpCycles(theta, firstIndex + i);
-    const [c, s] = [Math.cos(angle), Math.sin(angle)];
-    data[2 * i] = samples[2 * i]! * c - samples[2 * i + 1]! * s;
-    data[2 * i + 1] = samples[2 * i]! * s + samples[2 * i + 1]! * c;
-  }
-  // Sample i stands at j = firstIndex + i and bin b at k = firstBin + b; the kernel is read at k − j.
-  const shift = firstBin - firstIndex;
-  const kernel = convolutionKernel(size, theta, shift - (n - 1), shift + bins - 1);
-  const spectrum = new Float64Array(2 * size);
-  const kernelSpectrum = new Float64Array(2 * size);
-  fft.forward(spectrum, data);
-  fft.forward(kernelSpectrum, kernel);
-  multiplyInto(spectrum, kernelSpectrum, size);
-  fft.inverse(data, spectrum);
-  return readBins(data, size, request, shift);
-}
-
-function readBins(convolved: Float64Array, size: number, { theta, firstBin, bins }: ZoomRequest, shift: number): Float64Array {
-  const out = new Float64Array(2 * bins);
-  for (let b = 0; b < bins; b++) {
-    const at = 2 * ((((shift + b) % size) + size) % size);
-    const angle = -2 * Math.PI * chirpCycles(theta, firstBin + b);
-    const [c, s] = [Math.cos(angle), Math.sin(angle)];
-    out[2 * b] = convolved[at]! * c - convolved[at + 1]! * s;
-    out[2 * b + 1] = convolved[at]! * s + convolved[at + 1]! * c;
+  const kernel = kernelOf(size, theta, n, room);
+  const turns = new Float64Array(2 * n);
+  const [data, spectrum, out] = [new Float64Array(2 * size), new Float64Array(2 * size), new Float64Array(2 * bins)];
+  const ends = new Float64Array(2 * room);
+  for (let b = 0; b < room; b++) putTurn(ends, 2 * b, theta, b * (2 * firstIndex + b), -1);
+  for (let from = 0; from < bins; from += room) {
+    // Sample i stands at j = firstIndex + i and bin b of this run at k = firstBin + from + b.
+    for (let i = 0; i < n; i++) putTurn(turns, 2 * i, theta, 2 * (firstBin + from) * (firstIndex + i) + i * i, -1);
+    data.fill(0);
+    data.set(samples);
+    multiplyInto(data, turns, n);
+    fft.forward(spectrum, data);
+    multiplyInto(spectrum, kernel, size);
+    fft.inverse(data, spectrum);
+    const run = Math.min(room, bins - from);
+    multiplyInto(data, ends, run);
+    out.set(data.subarray(0, 2 * run), 2 * from);
   }
   return out;
 }
