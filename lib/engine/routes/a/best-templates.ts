@@ -1,6 +1,6 @@
 import type { BestTemplate, MatchRequest, Side, TemplateRequest } from '@/lib/engine/contract/route';
 import type { Response } from '@/lib/engine/contract/settings';
-import { brentMaximum, type Top } from '@/lib/engine/series/brent-maximum';
+import { brentMaximum } from '@/lib/engine/series/brent-maximum';
 import { JointSearch, massGrid } from './joint-search';
 import type { Numerics } from './numerics';
 import type { SpectrumStore } from './spectrum-store';
@@ -140,27 +140,40 @@ export function hillsOf(scan: Scanned, templates: number, factors: readonly numb
   return hills.sort((p, q) => q.ceiling - p.ceiling || p.template - q.template || p.factor - q.factor);
 }
 
-/** The top of one hill: its place by the scan, its height on the route's own bins. */
-function topOf(scan: TemplateScan, { template, factor }: Hill, a: Side, request: RealRequest, factors: readonly number[], { store, numerics }: Context): Top {
-  const searched = { mass: factors.length > 1, inclination: false, azimuth: false };
-  const search = new JointSearch(pairRequest(request, a, template), searched, store, numerics);
-  const height = (massFactor: number): Top => ({ x: massFactor, value: search.valueAt({ massFactor, inclinationRad: request.templates[template]!.inclinationRad, azimuthShiftRad: 0 }) });
+/** The top of one hill by the scan. */
+function topOf(scan: TemplateScan, { template, factor }: Hill, factors: readonly number[]): Summit {
   const here = factors[factor]!;
-  if (factors.length === 1) return height(here);
+  if (factors.length === 1) return { index: template, massFactor: here, value: scan.sharp(template, here) };
   const [low, high] = [factors[Math.max(0, factor - 1)]!, factors[Math.min(factors.length - 1, factor + 1)]!];
-  const found = brentMaximum((x) => scan.sharp(template, Math.exp(x)), Math.log(low), Math.log(high), Math.log(here), REFINED);
+  const { x, value } = brentMaximum((at) => scan.sharp(template, Math.exp(at)), Math.log(low), Math.log(high), Math.log(here), REFINED);
   // The ends of the range are the range's own numbers, not e^{ln x}.
-  return height([low, high].find((x) => Math.abs(found.x - Math.log(x)) < 1e-14) ?? Math.exp(found.x));
+  return { index: template, massFactor: [low, high].find((end) => Math.abs(x - Math.log(end)) < 1e-14) ?? Math.exp(x), value };
 }
 
+interface Summit extends BestPlace {
+  readonly value: number;
+}
+
+const highest = (tops: readonly Summit[]): Summit | undefined =>
+  tops.reduce<Summit | undefined>((best, top) => (best === undefined || top.value > best.value || (top.value === best.value && top.index < best.index) ? top : best), undefined);
+
+/** Its height on the route's own bins. */
+function heightOf({ index, massFactor }: Summit, a: Side, request: RealRequest, searched: boolean, { store, numerics }: Context): Summit {
+  const search = new JointSearch(pairRequest(request, a, index), { mass: searched, inclination: false, azimuth: false }, store, numerics);
+  return { index, massFactor, value: search.valueAt({ massFactor, inclinationRad: request.templates[index]!.inclinationRad, azimuthShiftRad: 0 }) };
+}
+
+/** The highest of all hills; the scan's own bins do not tell hills of nearly one height apart. */
 function bestOf(scan: TemplateScan, a: Side, request: RealRequest, factors: readonly number[], context: Context): BestPlace {
-  let best: BestPlace & { readonly value: number } = { index: 0, massFactor: 1, value: -Infinity };
+  const tops: Summit[] = [];
+  const best = (): number => highest(tops)?.value ?? -Infinity;
   for (const hill of hillsOf(scan, request.templates.length, factors)) {
-    if (hill.ceiling < best.value) break;
-    const { x, value } = topOf(scan, hill, a, request, factors, context);
-    if (value > best.value || (value === best.value && hill.template < best.index)) best = { index: hill.template, massFactor: x, value };
+    if (hill.ceiling < best() - SHARP) break;
+    tops.push(topOf(scan, hill, factors));
   }
-  return best;
+  const near = tops.filter(({ value }) => value >= best() - 2 * SHARP);
+  const { index, massFactor } = (near.length > 1 ? highest(near.map((top) => heightOf(top, a, request, factors.length > 1, context))) : near[0]) ?? { index: 0, massFactor: 1 };
+  return { index, massFactor };
 }
 
 /**
