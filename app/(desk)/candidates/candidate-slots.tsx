@@ -1,5 +1,6 @@
 import Link from 'next/link';
 import type { Route } from 'next';
+import { askingQuery } from '@/app/(public)/variations/asked-variation';
 import type { RecordSlots } from '@/app/_ui/claim/record-view';
 import { formatDay } from '@/app/views/dates';
 import type { Candidate } from '@/lib/explain/candidate';
@@ -21,7 +22,7 @@ export interface CandidateFacts {
   readonly mayAsk: boolean;
   /** What has been said in threads of a claim: a number is asked for once. */
   readonly said?: (claimId: string) => readonly string[];
-  /** Where a variation with these settings can be tried; null where none can. */
+  /** Where a variation that reads it so can be tried; null where none can. */
   readonly varyAt: string | null;
 }
 
@@ -37,8 +38,11 @@ function Answer({ answer }: { readonly answer: CandidateAnswerView }) {
   );
 }
 
-function tryHref(varyAt: string, claimId: string, { settings }: Candidate): Route {
-  return `${varyAt}?vary=${encodeURIComponent(claimId)}&settings=${encodeURIComponent(JSON.stringify(settings))}&open=${encodeURIComponent(claimId)}#${encodeURIComponent(claimId)}` as Route;
+/** One changed setting as a setting; a pair, or what no sheet can say, as readings by their names. */
+function tryHref(varyAt: string, claimId: string, { id, settings, changes }: Candidate): Route {
+  const says = changes === 1 && Object.keys(settings).length > 0;
+  const query = askingQuery(claimId, says ? { settings } : { readings: id.split(' + ') });
+  return `${varyAt}?${query.toString()}&open=${encodeURIComponent(claimId)}#${encodeURIComponent(claimId)}` as Route;
 }
 
 /** What stands under a candidate and under the number that tells candidates apart, for whoever looks. */
@@ -46,14 +50,13 @@ export function candidateSlots({ submissionId, runId, answers, mayAnswer, mayTak
   return {
     candidate: (claimId, candidate) => {
       const answer = answerToCandidate(answers, runId, claimId, candidate.id);
-      const declares = Object.keys(candidate.settings).length > 0;
       return (
         <>
           {answer && <Answer answer={answer} />}
           {!answer && !mayAnswer && <p className="text-ui text-ink-2">The authors have not answered.</p>}
           {answer?.answer === 'confirmed' && mayTakeOver && runId !== null && <TakeOver submissionId={submissionId} runId={runId} claimId={claimId} candidateId={candidate.id} />}
           {mayAnswer && runId !== null && <AnswerCandidate key={answer?.answer ?? ''} submissionId={submissionId} runId={runId} claimId={claimId} candidate={candidate} again={answer !== null} />}
-          {varyAt !== null && declares && <p><Link href={tryHref(varyAt, claimId, candidate)} className="inline-flex min-h-8 items-center text-ui">Try it as a variation</Link></p>}
+          {varyAt !== null && <p><Link href={tryHref(varyAt, claimId, candidate)} className="inline-flex min-h-8 items-center text-ui">Try it as a variation</Link></p>}
         </>
       );
     },

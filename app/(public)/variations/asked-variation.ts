@@ -46,17 +46,17 @@ export function askedVariation(query: VariationQuery): AskedVariation | null {
   const text = one(query.settings).slice(0, MOST_CHARACTERS);
   const settings = text === '' ? undefined : parsed(text);
   if (text !== '' && settings === undefined) return { claimId, changes: {}, trouble: ['The settings in this address are no JSON. Choose them below.'] };
-  const readings = one(query.readings).slice(0, MOST_CHARACTERS);
+  const readings = one(query.readings).slice(0, MOST_CHARACTERS).trim().replace(/\s+/g, ' ');
   const [noise, mask] = [noiseIn(one(query.noise).slice(0, MOST_CHARACTERS)), maskIn(one(query.mask).slice(0, 100))];
-  const asked = { ...(settings !== undefined && { settings }), ...(noise && { noise }), ...(readings !== '' && { readings: readings.split(',') }), ...(mask && { mask }) };
+  const asked = { ...(settings !== undefined && { settings }), ...(noise && { noise }), ...(readings !== '' && { readings: readings.split(' ') }), ...(mask && { mask }) };
   if (Object.keys(asked).length === 0) return { claimId, changes: {}, trouble: [] };
   const changes = parseInput(changesInput, asked);
   if (changes.ok) return { claimId, changes: changes.value, trouble: [] };
   return { claimId, changes: {}, trouble: ['The change in this address cannot be read.', ...(changes.error.problems ?? []).map((p) => `${p.where}: saw ${p.saw}; expected ${p.expected}.`)] };
 }
 
-/** The query that fills the form with these changes. */
+/** Readings are parted by spaces: an id may hold a comma. The query that fills the form with these changes. */
 export function askingQuery(claimId: string, { settings, noise, readings, mask }: AskedChanges): URLSearchParams {
   const curve = noise && ('curve' in noise ? noise.curve : `named:${noise.named}`);
-  return new URLSearchParams({ vary: claimId, ...(settings && { settings: JSON.stringify(settings) }), ...(curve && { noise: curve }), ...(readings && { readings: readings.join(',') }), ...(mask && { mask: `${mask.from},${mask.to}` }) });
+  return new URLSearchParams({ vary: claimId, ...(settings && { settings: JSON.stringify(settings) }), ...(curve && { noise: curve }), ...(readings && { readings: readings.join(' ') }), ...(mask && { mask: `${mask.from},${mask.to}` }) });
 }

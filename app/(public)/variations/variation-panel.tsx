@@ -4,6 +4,7 @@ import type { Route } from 'next';
 import { useRouter } from 'next/navigation';
 import { useCallback } from 'react';
 import { useProgress } from '@/app/(desk)/compose/[id]/use-progress';
+import { StopRun } from '@/app/(desk)/runs/stop-run';
 import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { ProgressBar } from '@/app/_ui/primitives/progress';
 import { Table } from '@/app/_ui/primitives/table';
@@ -33,10 +34,10 @@ export function VariationPanel({ source, own, left, asked }: PanelProps) {
   const look = useCallback(() => router.refresh(), [router]);
   const now = useProgress(source.submissionId, own.some(isLive), look);
   return (
-    <Disclosure summary="Vary a setting" open={own.length > 0 || asked !== null}>
+    <Disclosure summary="Vary it" open={own.length > 0 || asked !== null}>
       <div className="grid grid-cols-1 gap-4 rounded border border-dashed border-control px-4 py-3">
         <p className="text-ui text-ink-2">A variation of {source.claimId} is seen by you alone until you attach it to a comment or, on a record, open it by its link. The official number never changes. {left} left today.</p>
-        {left > 0 ? <VariationForm source={source} asked={asked} /> : <p className="text-ui">Those of today are used up. More can be asked for tomorrow.</p>}
+        {left > 0 ? <VariationForm source={source} asked={asked} /> : <p className="text-ui">Those of today are used up: each counts for 24 hours. Yours below stay, and so do their addresses.</p>}
         {own.length > 0 && <Saved source={source} own={own} now={now} />}
       </div>
     </Disclosure>
@@ -56,7 +57,7 @@ function Saved({ source, own, now }: { readonly source: VariationSource; readonl
               <Link href={`/variations/${v.id}` as Route} className="inline-flex min-h-8 items-center">{changesInWords(v.changes)}</Link>
               {v.note && <span className="block max-w-[40ch] text-small text-ink-2 [overflow-wrap:anywhere]">{v.note}</span>}
             </th>
-            <td><Outcome variation={v} unit={source.unit} now={now} /></td>
+            <td><Outcome variation={v} submissionId={source.submissionId} unit={source.unit} now={now} /></td>
             <td>{SEEN_BY[v.visibility]}{v.revision !== source.revision && <span className="block text-small text-ink-2">of revision {v.revision}</span>}</td>
           </tr>
         ))}
@@ -65,14 +66,14 @@ function Saved({ source, own, now }: { readonly source: VariationSource; readonl
   );
 }
 
-function Outcome({ variation, unit, now }: { readonly variation: VariationView; readonly unit: string; readonly now: Now }) {
+function Outcome({ variation, submissionId, unit, now }: { readonly variation: VariationView; readonly submissionId: string; readonly unit: string; readonly now: Now }) {
   const { run } = variation;
   switch (run.state) {
     case 'queued':
     case 'running': {
       const told = now?.runId === run.id ? now : run;
       const words = told.doing || (run.state === 'queued' ? 'waiting for a worker' : 'under way');
-      return <><span>{words}</span><ProgressBar label={`Variation: ${changesInWords(variation.changes)}`} fraction={told.fraction} /></>;
+      return <><span>{words}</span><ProgressBar label={`Variation: ${changesInWords(variation.changes)}`} fraction={told.fraction} /><StopRun id={submissionId} runId={run.id} what="variation" /></>;
     }
     case 'stopped': return run.because;
     case 'refused': return run.problems.map(formatProblem).join(' ');

@@ -49,6 +49,8 @@ export function changesOf(stored: VariationChanges | FirstVariationChanges): Var
   return { ...(Object.keys(own).length > 0 && { settings: own }), ...(curve && { noise: curve }) };
 }
 
+const signed = (x: number): string => String(x).replace('-', '−');
+
 const words: Readonly<Record<string, string>> = { fLowHz: 'lower cut-off', fHighHz: 'upper cut-off', totalMassMsun: 'total mass' };
 
 function settingInWords([name, value]: readonly [string, unknown]): string {
@@ -62,5 +64,5 @@ function settingInWords([name, value]: readonly [string, unknown]): string {
 /** Only what is changed, each as a few words. */
 export function changesAsWords({ settings: changed, noise: curve, readings: read = [], mask: cut }: VariationChanges): string[] {
   const noiseWords = curve === undefined ? [] : ['curve' in curve ? `built-in noise curve ${curve.curve}` : `noise curve ${curve.named}`];
-  return [...Object.entries(changed ?? {}).map(settingInWords), ...noiseWords, ...read.map(({ clause }) => `as if ${clause}`), ...(cut ? [`without ${cut.from} to ${cut.to}`] : [])];
+  return [...Object.entries(changed ?? {}).map(settingInWords), ...noiseWords, ...read.map(({ clause }) => `as if ${clause}`), ...(cut ? [`without ${signed(cut.from)} to ${signed(cut.to)} of the files’ time`] : [])];
 }

@@ -63,8 +63,8 @@ export function requestVariation(actor: Actor, submissionId: string, input: z.ou
 async function quotaSpent(tx: Transaction, actor: Actor, facts: SubmissionFacts): Promise<ReturnType<typeof fail> | null> {
   const counts = await countVariations(tx, facts.submissionId, userIdOf(actor) ?? '', 24);
   const quota = dailyQuota(facts, 'accountRole' in actor ? actor.accountRole : 'member');
-  if (counts.open >= UNFINISHED_VARIATIONS) return fail('limit', `${UNFINISHED_VARIATIONS} variations of yours are under way. Wait for one to end.`);
-  return counts.lately >= quota ? fail('limit', `${quota} variations were asked for here within a day. Try again tomorrow.`) : null;
+  if (counts.open >= UNFINISHED_VARIATIONS) return fail('limit', `${UNFINISHED_VARIATIONS} variations of yours are under way. Wait for one to end, or stop one.`);
+  return counts.lately >= quota ? fail('limit', `${quota} variations of this submission were asked for within 24 hours, which is as many as you may. The oldest makes room again a day after it was asked for.`) : null;
 }
 
 interface Asked {

@@ -11,7 +11,7 @@ import { getFigures, listRuns } from '@/lib/services/runs/list-runs';
 import { changesInput } from '@/lib/services/variations/changes';
 import { getVariation } from '@/lib/services/variations/get-variation';
 import { openByLink } from '@/lib/services/variations/open-by-link';
-import { listVariations } from '@/lib/services/variations/list-variations';
+import { listVariations, pageWithReadings } from '@/lib/services/variations/list-variations';
 import { requestVariation } from '@/lib/services/variations/request-variation';
 import { varySheet } from '@/lib/services/variations/vary-sheet';
 import { burstSheet } from '../../support/burst-sheet';
@@ -138,6 +138,36 @@ describe('what may be changed', () => {
     expect(changesInput.safeParse({ settings: { fLowHz: -1 } }).success).toBe(false);
     expect(changesInput.safeParse({ settings: { fLow: 20 } }).success).toBe(false);
     expect(changesInput.safeParse({}).success).toBe(false);
+  });
+});
+
+describe('a convention read otherwise', () => {
+  const read = (changes: { readings?: string[]; mask?: { from: number; to: number } }) => requestVariation(author, id, { claimId: 'C1', changes, note: '' });
+
+  it('is one of those that the base run offers, and is kept in its words', async () => {
+    const offered = must(await listVariations(author, id, 1)).readings['C1'] ?? [];
+    const perCent = offered.find((reading) => reading.id === 'C55:per-cent');
+    expect(perCent).toEqual({ id: 'C55:per-cent', convention: 'C55', clause: 'it is given in per cent', says: null, factor: 100 });
+    const { variationId } = must(await read({ readings: ['C55:per-cent'] }));
+    await desk.runAll();
+    const view = must(await getVariation(author, variationId));
+    expect(view.changes).toEqual({ readings: [{ id: 'C55:per-cent', clause: 'it is given in per cent' }] });
+    const [varied, official] = [view.run.state === 'measured' ? view.run.claim.points[0] : undefined, view.official.points[0]];
+    expect(varied?.value).toBe(100 * (official?.value ?? Number.NaN));
+    expect(varied?.expandedUncertainty).toBe(100 * (official?.expandedUncertainty ?? Number.NaN));
+    expect(must(await pageWithReadings(author, id, { limit: 1, claimId: 'C1' })).readings).toEqual(offered);
+  });
+
+  it('is refused by name where it is not offered, and told by the run where a setting contradicts it', async () => {
+    expect(await read({ readings: ['C20:doubled'] })).toMatchObject({ ok: false, error: { code: 'invalid', problems: [{ where: '/changes/readings/0', saw: 'C20:doubled' }] } });
+    for (const changes of [{ readings: ['C02:louder', 'C02:quieter'] }, { readings: ['loud'] }, { mask: { from: 1, to: 1 } }]) expect(changesInput.safeParse(changes).success).toBe(false);
+    const { variationId } = must(await read({ mask: { from: 7, to: 8 } }));
+    await desk.runAll();
+    expect(must(await getVariation(author, variationId)).run).toMatchObject({ state: 'refused', problems: [{ where: '/changes/mask', saw: '7 to 8' }] });
+  });
+
+  it('can be of no check and no official run: the database refuses it', async () => {
+    await expect(desk.sql(`insert into runs (submission_id, revision_id, kind, engine, sheet, inputs, inputs_digest, otherwise) select submission_id, revision_id, 'check', engine, sheet, inputs, inputs_digest, '{"readings":["C55:per-cent"]}' from runs where kind = 'official' limit 1`)).rejects.toThrow(/runs_otherwise_only_varied/);
   });
 });
 

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { askedVariation } from '@/app/(public)/variations/asked-variation';
+import { askedVariation, askingQuery } from '@/app/(public)/variations/asked-variation';
 import { changesFrom, fieldsFrom, isUnchanged } from '@/app/(public)/variations/variation-fields';
 import { changesInWords, inTolerancesText } from '@/app/(public)/variations/variation-words';
 import { changesAsWords, changesInput, changesOf } from '@/lib/services/variations/changes';
@@ -19,7 +19,7 @@ describe('the form of a variation', () => {
   });
 
   it('is filled by changes and gives the same back', () => {
-    const changes = { settings: { fLowHz: 30, taper: null, response: { plus: 0.5, cross: 0.5 }, modes: 'all' }, noise: { curve: 'G2' } };
+    const changes = { settings: { fLowHz: 30, taper: null, response: { plus: 0.5, cross: 0.5 }, modes: 'all' }, noise: { curve: 'G2' }, readings: ['C02:quieter'], mask: { from: -1, to: 2.5 } };
     expect(changesFrom(fieldsFrom(changes), declared)).toEqual(changes);
   });
 });
@@ -28,6 +28,9 @@ describe('an address that asks for a variation', () => {
   it('fills the form', () => {
     expect(askedVariation({ vary: 'C1', settings: '{"fLowHz":30,"taper":null}', noise: 'G2' })).toEqual({ claimId: 'C1', changes: { settings: { fLowHz: 30, taper: null }, noise: { curve: 'G2' } }, trouble: [] });
     expect(askedVariation({ vary: 'C1', noise: 'named:S' })).toMatchObject({ changes: { noise: { named: 'S' } } });
+    const all = { settings: { lMax: 4 }, noise: { curve: 'G2' }, readings: ['C06:maximise=time,phase', 'C02:quieter'], mask: { from: -50.5, to: 10 } };
+    expect(askedVariation(Object.fromEntries(askingQuery('C1', all)))).toEqual({ claimId: 'C1', changes: all, trouble: [] });
+    for (const bad of [{ readings: 'C02:quieter C02:louder' }, { readings: 'louder' }, { mask: '10,5' }, { mask: 'x' }]) expect(askedVariation({ vary: 'C1', ...bad })?.trouble.length).toBeGreaterThan(0);
     expect(askedVariation({ vary: 'C2' })).toEqual({ claimId: 'C2', changes: {}, trouble: [] });
     expect(askedVariation({ settings: '{"fLowHz":30}' })).toBeNull();
   });
@@ -51,6 +54,9 @@ describe('changes', () => {
 
   it('are told in words', () => {
     expect(changesInWords({ settings: { fLowHz: 30, taper: null }, noise: { curve: 'G2' } })).toBe('lower cut-off 30 Hz, taper not declared, noise curve G2, built in');
+    const read = { readings: [{ id: 'C02:quieter', clause: 'the spectrum is doubled' }], mask: { from: -50, to: 10 } };
+    expect(changesInWords(read)).toBe('as if the spectrum is doubled, without −50 to 10 of the files’ time');
+    expect(changesAsWords(read)).toEqual(['as if the spectrum is doubled', 'without −50 to 10 of the files’ time']);
     expect(changesAsWords({ settings: { fLowHz: 30, modes: [[2, 2]] }, noise: { named: 'S' } })).toEqual(['lower cut-off 30 Hz', 'modes [[2,2]]', 'noise curve S']);
     expect([inTolerancesText(2.5), inTolerancesText(-123.4), inTolerancesText(0), inTolerancesText(1e-9), inTolerancesText(null)]).toEqual(['+2.50 T', '−123 T', '0 T', 'less than 0.01 T', 'no tolerance to measure by']);
   });
