@@ -33,12 +33,16 @@ export const hann = (u: number): number => 0.5 - 0.5 * Math.cos(2 * Math.PI * u)
 export const blackman = (u: number): number => 0.42 - 0.5 * Math.cos(2 * Math.PI * u) + 0.08 * Math.cos(4 * Math.PI * u);
 
 const SEGMENT = 4 * RATE_HZ;
-/** Welch: segments of 4 s, half overlapping, no detrending; one-sided, on multiples of a quarter of a hertz. */
-function welch(x: Float64Array, window: (u: number) => number): Float64Array {
+/** What the segments of an estimate of noise have in common: half of each with the next, or nothing. */
+export type Segments = 'half-overlapping' | 'side-by-side';
+
+/** Welch: the mean over segments of 4 s, no detrending; one-sided, on multiples of a quarter of a hertz. */
+function welch(x: Float64Array, window: (u: number) => number, segments: Segments): Float64Array {
   const weights = Float64Array.from({ length: SEGMENT }, (_, i) => window(i / SEGMENT));
   const power = weights.reduce((sum, w) => sum + w * w, 0);
   const density = new Float64Array(SEGMENT / 2 + 1);
-  const starts = Array.from({ length: (2 * x.length) / SEGMENT - 1 }, (_, k) => (k * SEGMENT) / 2);
+  const stride = segments === 'side-by-side' ? SEGMENT : SEGMENT / 2;
+  const starts = Array.from({ length: (x.length - SEGMENT) / stride + 1 }, (_, k) => k * stride);
   const [data, out] = [new Float64Array(2 * SEGMENT), new Float64Array(2 * SEGMENT)];
   for (const start of starts) {
     weights.forEach((w, i) => (data[2 * i] = w * x[start + i]!));
@@ -52,8 +56,8 @@ function welch(x: Float64Array, window: (u: number) => number): Float64Array {
 export type Between = 'density' | 'inverse';
 
 /** The noise of a strain record from 10 to 2000 Hz, with seven points more between two of Welch's: the engine's own rule then has little left to choose. */
-export function measuredNoise(x: Float64Array, window: (u: number) => number, between: Between): NoiseCurve {
-  const density = welch(x, window);
+export function measuredNoise(x: Float64Array, window: (u: number) => number, between: Between, segments: Segments): NoiseCurve {
+  const density = welch(x, window, segments);
   const f = Float64Array.from({ length: 1990 * 4 * 8 + 1 }, (_, i) => 10 + i / 32);
   const values = f.map((hz) => {
     const [k, part] = [Math.floor(4 * hz), (4 * hz) % 1];
@@ -65,7 +69,7 @@ export function measuredNoise(x: Float64Array, window: (u: number) => number, be
   return curve.value.curve;
 }
 
-/** A record of 32 s, ramped already, as route A takes it. */
-export const recordOf = (name: string, plus: Float64Array, cross: Float64Array): Side => ({
-  waveform: columns(name, times, ramped(plus), ramped(cross)), taper: { start: null, end: null }, secondsPerUnit: 1, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0,
+/** A record of 32 s, ramped, as route A takes it; moved later by so many samples. */
+export const recordOf = (name: string, plus: Float64Array, cross: Float64Array, later = 0): Side => ({
+  waveform: columns(name, times.map((t) => t + later / RATE_HZ), ramped(plus), ramped(cross)), taper: { start: null, end: null }, secondsPerUnit: 1, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0,
 });

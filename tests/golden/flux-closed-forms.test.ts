@@ -4,6 +4,10 @@ import { peakLuminosity } from '@/lib/engine/quantities/peak-luminosity';
 import { radiatedAngularMomentum } from '@/lib/engine/quantities/radiated-angular-momentum';
 import { radiatedEnergy } from '@/lib/engine/quantities/radiated-energy';
 import { recoil } from '@/lib/engine/quantities/recoil';
+import { energyFlux } from '@/lib/engine/radiation/flux-figure';
+import { totalsOnSphere } from '@/lib/engine/radiation/momentum-on-sphere';
+import { momentumProducts } from '@/lib/engine/radiation/momentum-products';
+import { ratesOf } from '@/lib/engine/radiation/vector-integrals';
 import { allModes, synthesise } from '@/lib/engine/synthesis/synthesise';
 import { C_KM_PER_S, LUMINOSITY_ERG_PER_S } from '@/lib/engine/units/constants';
 import { goldenChecks, type GoldenCheck } from './golden-check';
@@ -75,6 +79,31 @@ const checksOf = (route: 'A' | 'B'): GoldenCheck[] => [
 
 describe.each(routes)('fluxes against closed forms, route %s', (route) => {
   goldenChecks(checksOf(route));
+});
+
+describe('D5: five modes of news that stand still (required: independent derivation; quadrature of |ḣ|² n̂/16π over the sphere, and Ruiz et al. 2008, arXiv:0707.4654, Eqs. (3.14)–(3.15))', () => {
+  const still = [[2, 2, 0.3, 0.1], [2, 1, 0.02, -0.05], [3, 3, -0.04, 0.03], [3, 2, 0, 0.01], [4, 4, 0.015, 0]] as const;
+  const [E, ...P] = [0.002103332045, 0.0001546060406, -5.531662026e-5, 0.00138405322] as const;
+  const at = (axis: Float64Array): Mode[] => still.map(([l, m, re, im]) => modeFrom(axis, l, m, () => [re, im]));
+  const relative = 1e-9;
+
+  it('lose energy and momentum by sums over neighbouring modes', () => {
+    const axis = Float64Array.of(0);
+    const radiation = { axis, isEven: true, news: at(axis), strain: null, noiseGain: null };
+    expect(energyFlux(radiation)[0]).toAgreeWith(E, { relative });
+    ratesOf(momentumProducts(radiation.news), radiation).forEach((rate, k) => { expect(rate[0]).toAgreeWith(P[k]!, { relative }); });
+  });
+  it('lose the same over a grid on the sphere', () => {
+    const { energy, momentum } = totalsOnSphere(at(Float64Array.of(0)), Float64Array.of(1));
+    expect(energy).toAgreeWith(E, { relative });
+    momentum.forEach((p, k) => { expect(p).toAgreeWith(P[k]!, { relative }); });
+  });
+  it.each(routes)('leave the recoil and the energy that go with it after 100 M, route %s', (route) => {
+    const axis = evenTimes(0, 100, 0.5);
+    const wave: Waveform = { ...modeSet(axis, at(axis), 'news'), negativeM: 'none' };
+    expect(numberBy(radiatedEnergy, route, wave)).toAgreeWith(100 * E, { relative });
+    expect(numberBy(recoil, route, wave, { normaliseBy: 'M' })).toAgreeWith(C_KM_PER_S * 100 * Math.hypot(...P), { relative });
+  });
 });
 
 describe('what is radiated', () => {

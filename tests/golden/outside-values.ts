@@ -31,7 +31,7 @@ export const checks: ReadonlyMap<string, Place> = new Map([
   ...all('C9', 'golden/published-ranges', 'a chirp mass higher by'),
   ...all('D1', 'golden/flux-closed-forms', 'fluxes against closed forms, route %s'),
   ...all('D2 D3', 'golden/energy', 'radiated energy against closed forms, route %s'),
-  ['D5', { because: 'Open: its digits are not held yet. T4 (properties/vector-fluxes.test.ts) holds the same formulas to a quadrature over the sphere, for random modes.' }],
+  ...all('D5', 'golden/flux-closed-forms', 'five modes of news that stand still'),
   ...all('D6', 'golden/flux-closed-forms', 'comes from ψ₄ of a tapered tone'),
   ...all('D7 D8 D9', 'golden/quasi-normal', 'Mω_R by the engine'),
   ...all('D10 D11 D12 D13 D14 D18 D19 D20', 'golden/remnant-fits', 'mean of the masses'),
@@ -48,7 +48,7 @@ export const checks: ReadonlyMap<string, Place> = new Map([
   ...all('G5 G7', 'golden/flux-reference', 'peaks at 0.001021'),
   ...all('G6', 'golden/quasi-normal', 'Mω_R by the engine'),
   ...all('G9', 'golden/energy-reference', 'find the same energy in the simulation'),
-  ['B13', { because: 'It rests on how noise is estimated from 32 s of strain, which this engine does not do: with Welch’s mean the range is 71 Mpc, by the engine and by a plain sum alike (detector-event.test.ts, decision 0118).' }],
+  ...all('B13', 'golden/detector-event', 'are heard to 75 ± 3 % Mpc on average'),
 ]);
 
 /** Identities of the domain reference, appendix C. */
