@@ -1,3 +1,4 @@
+import type { ComparedPoint } from './compare';
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 
 type Values = readonly (number | null)[];
@@ -40,6 +41,15 @@ function overlaid(official: Figure, varied: Figure): Figure {
 
 /** Curves of two points of a sweep differ by more than what was varied. */
 const atOnePlace = ({ at: a = {} }: Figure, { at: b = {} }: Figure): boolean => Object.keys(a).length === Object.keys(b).length && Object.entries(a).every(([name, value]) => b[name] === value);
+
+/** One value in the place of a sweep, as a point on the axes of the sweep; nothing where it has no place of its own there. */
+export function pointOnSweep(official: readonly Figure[], [only, ...others]: readonly ComparedPoint[]): readonly Figure[] {
+  const sweep = official.find(({ kind }) => kind === 'sweep');
+  const line = sweep?.series.find(({ role }) => role === 'recomputed');
+  const place = only?.at[sweep?.x.label ?? ''];
+  if (!sweep || !line || sweep.x.words || typeof place !== 'number' || !only?.varied || others.some(({ varied }) => varied !== null)) return [];
+  return [{ ...sweep, x: { ...sweep.x, values: [place] }, series: [{ ...line, values: [only.varied.value] }] }];
+}
 
 /** Figures of the official run with those of the variation laid over, by kind, in their order; what only one has stands alone. */
 export function overlayFigures(official: readonly Figure[], varied: readonly Figure[]): readonly Figure[] {

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { comparePoints } from '@/app/(public)/variations/compare';
-import { overlayFigures } from '@/app/(public)/variations/overlay';
+import { overlayFigures, pointOnSweep } from '@/app/(public)/variations/overlay';
 import { drawnAsPoints, drawnDashed } from '@/app/_ui/charts/panels';
 import type { Figure } from '@/lib/engine/contract/measurement';
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
@@ -65,6 +65,18 @@ describe('the plots of both', () => {
     expect(overlayFigures([at(60)], [figure([0, 1], [1, 3])]).map((f) => f.title)).toEqual(['Weighted integrand', 'Weighted integrand, varied']);
     expect(overlayFigures([at(60)], [at(100)])).toHaveLength(2);
     expect(overlayFigures([at(60)], [{ ...at(60), series: figure([0, 1], [2, 3]).series }])).toHaveLength(1);
+  });
+
+  it('set one value in the place of a sweep as a point on the axes of the sweep', () => {
+    const drawn: Figure = { ...figure([60, 100], [0.9, 0.8], 'sweep'), x: { label: 'totalMassMsun', unit: 'M☉', scale: 'linear', values: [60, 100] } };
+    const beside = comparePoints(sweep, claim(point(0.7)), { settings: { totalMassMsun: 80 } }, 'absolute');
+    const [both] = overlayFigures([drawn], pointOnSweep([drawn], beside));
+    expect(both?.x.values).toEqual([60, 80, 100]);
+    const lone = both?.series.find(({ role }) => role === 'varied');
+    expect(lone?.values).toEqual([null, 0.7, null]);
+    expect(both && lone && drawnAsPoints(both, lone)).toBe(true);
+    expect(pointOnSweep([drawn], comparePoints(sweep, sweep, {}, 'absolute'))).toEqual([]);
+    expect(pointOnSweep([], beside)).toEqual([]);
   });
 
   it('keep a figure that only one of them has', () => {

@@ -20,7 +20,7 @@ import { ChangedTable } from '../changed-table';
 import { comparePoints } from '../compare';
 import { ComparedTable } from '../compared-table';
 import { LinkSharing } from '../link-sharing';
-import { overlayFigures } from '../overlay';
+import { overlayFigures, pointOnSweep } from '../overlay';
 import { RunStanding } from '../run-standing';
 
 export const metadata: Metadata = { title: 'Variation', robots: { index: false } };
@@ -37,10 +37,13 @@ async function load(id: string): Promise<{ readonly actor: Actor; readonly varia
   return { actor, variation: orNotFound(found) };
 }
 
-async function figuresOf(actor: Actor, { submissionId, runId, officialRunId, claimId, run }: VariationPage) {
+async function figuresOf(actor: Actor, variation: VariationPage) {
+  const { submissionId, runId, officialRunId, claimId, run } = variation;
   if (run.state !== 'measured') return null;
   const [official, varied] = [await getFigures(actor, submissionId, officialRunId), await getFigures(actor, submissionId, runId)];
-  return overlayFigures(official.ok ? (official.value.figures[claimId] ?? []) : [], varied.ok ? (varied.value.figures[claimId] ?? []) : []);
+  const [below, above] = [official, varied].map((found) => (found.ok ? (found.value.figures[claimId] ?? []) : []));
+  const points = comparePoints(variation.official, run.claim, variation.changes, 'absolute');
+  return overlayFigures(below ?? [], [...(above ?? []), ...(above?.some(({ kind }) => kind === 'sweep') ? [] : pointOnSweep(below ?? [], points))]);
 }
 
 /** Back to the claim, where this reader finds it, and on to one that begins with the same changes. */
