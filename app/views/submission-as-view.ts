@@ -3,6 +3,7 @@ import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { DraftView, LodgedView, RunView } from '@/lib/services/submissions/submission-view';
 import { answerTo } from '@/lib/services/submissions/finding-answers';
+import { answeredGuesses } from './answered-guesses';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
 import { logsOf } from './run-log';
@@ -51,6 +52,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     figures: extra.figures ?? {},
     figuresHref: run?.state === 'measured' ? figuresHref(submission.id, run.id) : null,
     answerTo: (finding) => answerTo(revision.answers, finding),
+    guesses: answeredGuesses(result?.guesses, revision.answers),
     logs: logsOf(run, result?.claims ?? []),
     statement: revision.statement || null,
     decision: null,

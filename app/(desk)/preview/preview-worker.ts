@@ -8,6 +8,7 @@ import { z } from 'zod';
 import { openArchive } from '@/lib/formats/archive';
 import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
 import { Sha256 } from '@/lib/formats/sha256';
+import { guessFiles } from '@/lib/pipeline/guesses/guess-files';
 import { preview } from '@/lib/pipeline/preview';
 import type { Source } from '@/lib/pipeline/reproduce-with';
 import type { NamedFile, PreviewAsk, PreviewNote } from './preview-message';
@@ -23,6 +24,7 @@ self.onmessage = (event: MessageEvent<PreviewAsk>): void => {
 
 async function look(ask: PreviewAsk): Promise<void> {
   if (ask.kind === 'files') return run({ sheetJson: ask.sheet, openFile: openAmong(ask.files) });
+  if (ask.kind === 'guess') return tell({ kind: 'guessed', guesses: await guessFiles(ask.sheet, { openFile: openAmong(ask.files) }, () => new Sha256()) });
   const opened = await openArchive(new BlobReader(ask.archive), ask.name);
   if (!opened.ok) return tell({ kind: 'refused', problems: opened.error });
   await run(opened.value);

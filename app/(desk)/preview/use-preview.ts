@@ -45,6 +45,7 @@ export function usePreview() {
     worker.onmessage = ({ data }: MessageEvent<PreviewNote>) => {
       if (data.kind === 'progress') return setState({ kind: 'running', fraction: data.fraction, doing: data.doing });
       end();
+      if (data.kind === 'guessed') return;
       setState(data.kind === 'done' ? { ...data, tookMs: performance.now() - begun } : data);
     };
     worker.onerror = (event) => {

@@ -4,6 +4,7 @@ import { Facts } from '../primitives/facts';
 import { Notice } from '../primitives/notice';
 import { ClaimTable, ClaimTableLegend } from './claim-table';
 import { FileList } from './file-list';
+import { GuessTable } from './guess-table';
 import { ReadingAndDecision } from './reading-and-decision';
 import { RecordHeader } from './record-header';
 import type { RecordSlots, RecordView, ReportView } from './record-view';
@@ -69,6 +70,7 @@ export function RecordPage({ view, slots = {}, trail, open }: RecordPageProps) {
         <ClaimTable view={view} slots={slots} open={open} />
         <ClaimTableLegend />
       </section>
+      {view.guesses && view.guesses.length > 0 && <div className="mt-10"><GuessTable guesses={view.guesses} /></div>}
       <Below view={view} slots={slots} />
     </div>
   );

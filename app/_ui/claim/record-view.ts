@@ -9,6 +9,7 @@ import type { ReactNode } from 'react';
 import type { FiguresByClaim, ResultDocument, VerdictWord } from '@/lib/pipeline/result';
 import type { ProgressStep } from '../primitives/progress';
 import type { ConventionNote, SettingReadings } from './convention-words';
+import type { AnsweredGuess } from './guess-words';
 import type { Place } from '@/lib/kernel/place';
 
 export type RecordMode = 'draft' | 'review' | 'public';
@@ -125,6 +126,8 @@ export interface RecordView {
   readonly address?: string | null;
   /** What the authors answered to a finding. */
   readonly answerTo: (finding: Finding) => string | null;
+  /** What the files say of their declaration; absent where that is not told. */
+  readonly guesses?: readonly AnsweredGuess[];
   /** Run log by claim id; `''` for the whole run. */
   readonly logs: Readonly<Record<string, string>>;
   /** Markdown with maths. */

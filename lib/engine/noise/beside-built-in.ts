@@ -36,7 +36,14 @@ export interface Point {
 /** More points than these say no more about a smooth curve. */
 const MOST_POINTS = 4000;
 
-/** The uploaded points inside a built-in curve's range; `read` says at which frequency the latter is asked. */
+/**
+ * The uploaded points inside a built-in curve's range; `read` says at which frequency the latter is asked.
+ * Shape:  one point a row of the curve, of more than 4000 rows every so many.
+ * Units:  f in Hz, psd in 1/Hz; `apart` is ln of a ratio of amplitude densities.
+ * Error:  rounding.
+ * Fails:  empty where the curve lies outside the range.
+ * Source: domain reference 4.2, V20 and C40.
+ */
 export function pointsAgainst({ f, psd }: UploadedCurve, curve: BuiltInCurve, read: (fHz: number) => number = (x) => x): Point[] {
   const points: Point[] = [];
   const stride = Math.ceil(f.length / MOST_POINTS);
@@ -74,7 +81,14 @@ export function constantRatio(points: readonly Point[]): number | null {
 
 const spread = (values: readonly number[]): boolean => values.length > 0 && values.every((x) => Math.abs(x) < SAME);
 
-/** S taken for its root or the other way round: the column was read as another density. */
+/**
+ * S taken for its root or the other way round: the column was read as another density.
+ * Shape:  a curve and a built-in one that share three octaves.
+ * Units:  psd in 1/Hz, as read.
+ * Error:  half a per cent of the amplitude density, at every point.
+ * Fails:  null where neither is so.
+ * Source: domain reference 4.2, V20 and C40.
+ */
 export function densityMistaken(curve: UploadedCurve, known: BuiltInCurve): string | null {
   const points = pointsAgainst(curve, known);
   if (!isEnough(points)) return null;
@@ -96,7 +110,14 @@ export interface Octave {
   readonly ratio: number;
 }
 
-/** Median ratio octave by octave, neighbours that agree drawn together. */
+/**
+ * Median ratio octave by octave, neighbours that agree drawn together.
+ * Shape:  at least one point, frequencies rising.
+ * Units:  Hz; ratios of amplitude densities.
+ * Error:  the median of each octave.
+ * Fails:  never; octaves without a point are left out.
+ * Source: domain reference 4.2, V20 and C40.
+ */
 export function byOctave(points: readonly Point[]): Octave[] {
   const found: Octave[] = [];
   const first = points[0]!.fHz;

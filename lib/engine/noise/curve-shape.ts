@@ -13,7 +13,14 @@ function shapeOf(points: readonly Point[]): string {
   return `lies up to ×${short(ratio)} ${above ? 'above' : 'below'} it, at ${short(far.fHz, 4)} Hz. Ratio of amplitude densities by octaves: ${list.join(', ')}`;
 }
 
-/** How a curve that is called after a built-in one, or copies a piece of it, lies beside it; null where there is nothing to say. */
+/**
+ * How a curve that is called after a built-in one, or copies a piece of it, lies beside it.
+ * Shape:  points against one built-in curve.
+ * Units:  ratios of amplitude densities.
+ * Error:  three per cent before anything is said.
+ * Fails:  null where there is nothing to say.
+ * Source: domain reference 4.2, V20 and C40.
+ */
 export function shapeBeside(points: readonly Point[], named: boolean): string | null {
   const apart = octaves(points.filter((point) => Math.abs(point.apart) > APART));
   const same = longestSame(points);

@@ -3,6 +3,7 @@ import { notesBeside } from '@/app/views/setting-readings';
 import type { Finding } from '@/lib/engine/contract/finding';
 import { settingText } from './claim-fields';
 import type { Problem } from '@/lib/kernel/problem';
+import type { SheetGuess } from '@/lib/pipeline/guesses/sheet-guess';
 import type { VerdictWord } from '@/lib/pipeline/result';
 import { answerTo, type FindingAnswer } from '@/lib/services/submissions/finding-answers';
 import type { DraftView } from '@/lib/services/submissions/submission-view';
@@ -37,6 +38,8 @@ export interface CheckSummary {
   readonly findings: readonly FoundFinding[];
   readonly verdicts: readonly { readonly id: string; readonly verdict: VerdictWord }[];
   readonly assumed: readonly AssumedSetting[];
+  /** What it saw in files that this browser does not have. */
+  readonly guesses: readonly SheetGuess[];
 }
 
 const order = ['stops-lodging', 'needs-answer', 'worth-a-look', 'note'];
@@ -54,6 +57,7 @@ export function checkSummary(check: DraftView['check'], answers: readonly Findin
     because: run.state === 'stopped' ? run.because : null,
     problems: run.state === 'refused' ? run.problems : [],
     findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))).map((found) => ({ ...found, answer: answerTo(answers, found.finding) })),
+    guesses: run.state === 'measured' ? (run.result.guesses ?? []) : [],
     verdicts: claims.map(({ id, verdict }) => ({ id, verdict })),
     assumed: claims.flatMap((c) => c.settings.filter((s) => s.standing === 'assumed' && s.value !== null).map((s) => ({ claim: c.id, name: s.name, value: settingText(s.value), unit: s.unit ?? '', notes: notesBeside(c.quantity, s.name) }))),
   };

@@ -11,9 +11,12 @@ import { LinkButton } from '@/app/_ui/primitives/link-button';
 import { OfflineStrap } from '@/app/_ui/primitives/offline-strap';
 import { Notice } from '@/app/_ui/primitives/notice';
 import { Button } from '@/app/_ui/primitives/button';
+import { Trouble } from '../../act-parts';
 import { say } from '@/app/_ui/primitives/toaster';
+import type { FindingAnswer } from '@/lib/services/submissions/finding-answers';
 import type { UploadView } from '@/lib/services/files/upload-view';
 import type { AuthorView, DraftSheet, FileView } from '@/lib/services/submissions/submission-view';
+import type { SheetGuess } from '@/lib/pipeline/guesses/sheet-guess';
 import type { NamedFile } from '../../preview/preview-message';
 import { CheckPart, isRunning } from './check-part';
 import type { CheckSummary } from './check-summary';
@@ -34,6 +37,8 @@ import type { QuantityRow } from './quantity-row';
 import { forget, useAutosave } from './save-draft';
 import { SaveLine } from './save-line';
 import { StatementPart, TitleField } from './statement-part';
+import { useGuessDesk } from './use-guess-desk';
+import { useGuesses } from './use-guesses';
 import { useImport } from './use-import';
 import { WaveformsPart, type ComposerForm } from './waveform-part';
 
@@ -51,6 +56,8 @@ export interface ComposerProps {
   readonly catalogue: readonly QuantityRow[];
   readonly check: CheckSummary | null;
   readonly beforeLodging: readonly string[];
+  /** The authors' words on findings and guesses. */
+  readonly answers: readonly FindingAnswer[];
   /** The record's own table with the numbers of the latest check, drawn on the server. */
   readonly children: ReactNode;
 }
@@ -82,6 +89,8 @@ function useComposer({ id, version, sheet, check }: ComposerProps) {
   return { form, saving, applyFix, go, take, put };
 }
 
+const noGuesses: readonly SheetGuess[] = [];
+
 export function Composer(props: ComposerProps) {
   const { id, files, children } = props;
   const { form, saving, applyFix, go, take, put } = useComposer(props);
@@ -89,6 +98,8 @@ export function Composer(props: ComposerProps) {
   const [given, setGiven] = useState<ReadonlyMap<string, Blob>>(new Map());
   const give = (some: readonly NamedFile[]) => setGiven((now) => new Map([...now, ...some.map(({ name, file }) => [name, file] as const)]));
   const names = files.map((f) => f.name);
+  const guesses = useGuesses(form, given, files, props.check?.guesses ?? noGuesses);
+  const { desk, trouble } = useGuessDesk({ id, form, guesses, answers: props.answers, saveNow: saving.saveNow });
   const keepMine = (version: number) => { saving.takeVersion(version); void saving.saveNow(); };
   const takeTheirs = (version: number, sheet: DraftSheet) => { saving.takeVersion(version); take(fieldsFromSheet(sheet)); forget(id); void saving.saveNow(); };
   return (
@@ -104,8 +115,8 @@ export function Composer(props: ComposerProps) {
         <div className="grid min-w-0 gap-10">
           <PartNav form={form} files={files.length} />
           <Part id="files" title="Files"><FilesPart id={id} files={files} uploads={props.uploads} usedBy={(name) => usersOf(form, name)} onGiven={give} importing={importing} /></Part>
-          <Part id="waveforms" title="Waveforms"><WaveformsPart id={id} form={form} stored={files} /></Part>
-          <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} /><div className="mt-2"><FromEarlier id={id} form={form} files={files} put={put} /></div></Part>
+          <Part id="waveforms" title="Waveforms"><WaveformsPart id={id} form={form} stored={files} desk={desk} /><Trouble trouble={trouble} /></Part>
+          <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} desk={desk} /><div className="mt-2"><FromEarlier id={id} form={form} files={files} put={put} /></div></Part>
           <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} verdicts={props.check?.current ? props.check.verdicts : []} /></Part>
           <Part id="preview" title="First look"><PreviewPart id={id} form={form} files={files} given={given} onGiven={give} /></Part>
           <Part id="statement" title="Statement"><StatementPart form={form} /></Part>

@@ -8,9 +8,10 @@ import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { emptyNoise } from './fields';
 import { FileOptions } from './file-options';
 import { errorAt } from './form-error';
+import { GuessList, type GuessDesk } from './guess-list';
 import type { ComposerForm } from './waveform-part';
 
-export function NoisePart({ form, files }: { readonly form: ComposerForm; readonly files: readonly string[] }) {
+export function NoisePart({ form, files, desk }: { readonly form: ComposerForm; readonly files: readonly string[]; readonly desk: GuessDesk }) {
   const rows = useFieldArray({ control: form.control, name: 'noise', keyName: 'key' });
   const free = () => files.find((f) => !form.getValues('waveforms').some((w) => w.file === f) && !form.getValues('noise').some((n) => n.file === f)) ?? '';
   const name = () => ['S', 'S2', 'S3', 'S4'].find((n) => !form.getValues('noise').some((r) => r.name === n)) ?? `S${form.getValues('noise').length + 1}`;
@@ -22,7 +23,7 @@ export function NoisePart({ form, files }: { readonly form: ComposerForm; readon
   return (
     <div className="grid gap-4">
       {rows.fields.length === 0 && <p className="text-ui text-ink-2">Matches and loudness need a noise curve; radiated energy needs none.</p>}
-      {rows.fields.map((row, i) => <NoiseRow key={row.key} form={form} index={i} files={files} onRemove={() => remove(i)} />)}
+      {rows.fields.map((row, i) => <NoiseRow key={row.key} form={form} index={i} files={files} desk={desk} onRemove={() => remove(i)} />)}
       <div className="flex flex-wrap gap-2">
         <Button onClick={() => rows.append(emptyNoise(name(), free() || files[0] || ''))} aria-disabled={files.length === 0 || undefined}>Declare a file as noise curve</Button>
         <Button onClick={() => rows.append(emptyNoise(name()))}>Use a built-in curve</Button>
@@ -31,7 +32,7 @@ export function NoisePart({ form, files }: { readonly form: ComposerForm; readon
   );
 }
 
-function NoiseRow({ form, index, files, onRemove }: { readonly form: ComposerForm; readonly index: number; readonly files: readonly string[]; readonly onRemove: () => void }) {
+function NoiseRow({ form, index, files, desk, onRemove }: { readonly form: ComposerForm; readonly index: number; readonly files: readonly string[]; readonly desk: GuessDesk; readonly onRemove: () => void }) {
   const { register, watch, setValue } = form;
   const at = `noise.${index}` as const;
   const { kind, curve, name, file } = watch(at);
@@ -54,6 +55,7 @@ function NoiseRow({ form, index, files, onRemove }: { readonly form: ComposerFor
       </div>
       <datalist id="noise-layouts"><option value="f asd" /><option value="f psd" /><option value="f characteristic" /></datalist>
       {kind === 'curve' && built && <p className="text-small text-ink-2">{built.source}. Known from {built.fLowHz} to {built.fHighHz} Hz; nothing is extrapolated.</p>}
+      {kind === 'file' && <GuessList part="noise" name={name.trim()} desk={desk} />}
       <div><Button size="low" tone="quiet" onClick={onRemove}>Remove this curve</Button></div>
     </fieldset>
   );

@@ -48,7 +48,7 @@ export default async function Compose({ params, searchParams }: PageProps) {
   const variations = draft.may.vary ? await loadFor(`/compose/${id}`, (actor) => listVariations(actor, id, draft.revision.number)) : null;
   const { revision } = draft;
   return (
-    <Composer key={revision.id} id={id} revision={revision.number} version={revision.version} sheet={revision.sheet} files={revision.files} uploads={uploads} authors={draft.authors} you={you.userId} stateWords={draft.stateWords} catalogue={catalogueRows()} check={checkSummary(draft.check, revision.answers)} beforeLodging={draft.beforeLodging}>
+    <Composer key={revision.id} id={id} revision={revision.number} version={revision.version} sheet={revision.sheet} files={revision.files} uploads={uploads} authors={draft.authors} you={you.userId} stateWords={draft.stateWords} catalogue={catalogueRows()} check={checkSummary(draft.check, revision.answers)} beforeLodging={draft.beforeLodging} answers={revision.answers}>
       <Reading draft={draft} variations={variations} asked={askedVariation(await searchParams)} />
     </Composer>
   );

@@ -5,7 +5,7 @@ import type { FileView } from '@/lib/services/submissions/submission-view';
 import type { NamedFile } from '../../preview/preview-message';
 import { PreviewPanel } from '../../preview/preview-panel';
 import { usePreview } from '../../preview/use-preview';
-import type { ComposerFields } from './fields';
+import { fileHere, namedIn } from './browser-files';
 import { sheetOf } from './use-import';
 import type { ComposerForm } from './waveform-part';
 
@@ -18,12 +18,6 @@ interface PreviewPartProps {
   readonly onGiven: (files: readonly NamedFile[]) => void;
 }
 
-/** Every file that the sheet names. */
-function namedIn({ waveforms, noise }: Pick<ComposerFields, 'waveforms' | 'noise'>): readonly string[] {
-  const several = waveforms.flatMap(({ rest }) => Object.values((rest['files'] ?? {}) as Record<string, string>));
-  return [...new Set([...waveforms.map(({ file }) => file), ...several, ...noise.flatMap(({ kind, file }) => (kind === 'file' ? [file] : []))])].filter((name) => name !== '');
-}
-
 /** A look at the draft as it stands in the form, saved or not, over files that are in this browser. */
 export function PreviewPart({ id, form, files, given, onGiven }: PreviewPartProps) {
   const { state, start, cancel } = usePreview();
@@ -31,12 +25,7 @@ export function PreviewPart({ id, form, files, given, onGiven }: PreviewPartProp
   const [trouble, setTrouble] = useState<string | null>(null);
   const [waveforms, noise] = form.watch(['waveforms', 'noise']);
   const wanted = namedIn({ waveforms, noise });
-  // A file that was replaced elsewhere is another file.
-  const here = (name: string): Blob | null => {
-    const blob = given.get(name);
-    const stored = files.find((file) => file.name === name);
-    return blob && (!stored || stored.bytes === blob.size) ? blob : null;
-  };
+  const here = (name: string): Blob | null => fileHere(name, given, files);
   const away = files.filter(({ name }) => wanted.includes(name) && here(name) === null);
   const look = () => start({ kind: 'files', sheet: sheetOf(form.getValues()), files: wanted.flatMap((name) => { const file = here(name); return file ? [{ name, file }] : []; }) });
   const fetchAway = async () => {

@@ -12,6 +12,7 @@ import { ArrayPart } from './array-part';
 import { emptyWaveform, usualColumns, type ComposerFields } from './fields';
 import { FileOptions } from './file-options';
 import { errorAt } from './form-error';
+import { GuessList, type GuessDesk } from './guess-list';
 
 export type ComposerForm = UseFormReturn<ComposerFields>;
 
@@ -70,9 +71,10 @@ interface WaveformsPartProps {
   readonly id: string;
   readonly form: ComposerForm;
   readonly stored: readonly FileView[];
+  readonly desk: GuessDesk;
 }
 
-export function WaveformsPart({ id, form, stored }: WaveformsPartProps) {
+export function WaveformsPart({ id, form, stored, desk }: WaveformsPartProps) {
   const files = stored.map((f) => f.name);
   const rows = useFieldArray({ control: form.control, name: 'waveforms', keyName: 'key' });
   const add = () => rows.append(emptyWaveform(nextName(form.getValues('waveforms').map((w) => w.name)), files.find((f) => !form.getValues('waveforms').some((w) => w.file === f) && !form.getValues('noise').some((n) => n.file === f)) ?? ''));
@@ -84,7 +86,7 @@ export function WaveformsPart({ id, form, stored }: WaveformsPartProps) {
   return (
     <div className="grid gap-4">
       {rows.fields.length === 0 && <EmptyState level={3} title="No waveform yet">Add a file above, then say here what stands in its columns.</EmptyState>}
-      {rows.fields.map((row, i) => <WaveformRow key={row.key} id={id} form={form} index={i} stored={stored} onRemove={() => remove(i)} />)}
+      {rows.fields.map((row, i) => <WaveformRow key={row.key} id={id} form={form} index={i} stored={stored} desk={desk} onRemove={() => remove(i)} />)}
       <div><Button onClick={add}>Declare a waveform</Button></div>
     </div>
   );
@@ -92,7 +94,7 @@ export function WaveformsPart({ id, form, stored }: WaveformsPartProps) {
 
 const nextName = (taken: readonly string[]): string => [...'ABCDEFGHJKLMNOPQRTUVWXYZ'].find((n) => !taken.includes(n)) ?? `W${taken.length + 1}`;
 
-function WaveformRow({ id, form, index, stored, onRemove }: WaveformsPartProps & { readonly index: number; readonly onRemove: () => void }) {
+function WaveformRow({ id, form, index, stored, desk, onRemove }: WaveformsPartProps & { readonly index: number; readonly onRemove: () => void }) {
   const { register, watch } = form;
   const at = `waveforms.${index}` as const;
   const { name, rest, file } = watch(at);
@@ -143,6 +145,7 @@ function WaveformRow({ id, form, index, stored, onRemove }: WaveformsPartProps &
           {binaryFields.map(([field, label]) => <TextField key={field} label={label} placeholder="not given" inputMode="decimal" error={errorAt(form, `${at}.${field}`)} {...register(`${at}.${field}`)} />)}
         </div>
       </Disclosure>
+      <GuessList part="waveforms" name={name.trim()} desk={desk} />
       <div><Button size="low" tone="quiet" onClick={onRemove}>Remove this waveform</Button></div>
     </fieldset>
   );
