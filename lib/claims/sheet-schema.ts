@@ -63,6 +63,7 @@ export type RawWaveform = z.infer<typeof waveformSchema>;
 
 export const noiseSchema = z.strictObject({
   file: path.optional(),
+  datasets: z.record(z.string(), z.string(), { error: 'an object such as {"f": "/f", "asd": "/asd"}' }).optional(),
   columns: columns.optional(),
   sided: oneOf(['one', 'two']).optional(),
   curve: text(80, 'the id of a built-in curve').optional(),
@@ -76,7 +77,7 @@ export const claimSchema = z.strictObject({
   noise: text(80, 'the name of a noise curve of this sheet').optional(),
   settings: z.record(z.string(), z.unknown(), { error: 'an object of settings' }).optional(),
   over: z.record(z.string(), z.unknown(), { error: 'an object with one swept setting' }).optional(),
-  claimed: z.unknown(),
+  claimed: z.unknown().nonoptional({ error: 'the claimed value' }),
   tolerance: finite('a tolerance of zero or more').min(0, { error: 'a tolerance of zero or more' }).nullish(),
 }, { error: 'an object that states a claim' });
 export type RawClaim = z.infer<typeof claimSchema>;

@@ -8,6 +8,7 @@ import { readTable } from './read-table';
 import { notFiniteFindings } from './series-findings';
 import { whereRow } from './row-place';
 import { readArrays } from './arrays/read-arrays';
+import type { ReadHdf5 } from './hdf5/hdf5-ask';
 import type { NumberTable } from './text/table';
 
 /** A noise table as its file gives it; the engine's noise room turns it into a curve. */
@@ -30,8 +31,8 @@ export interface ReadNoise {
 }
 
 /** One uploaded noise table of a sheet. Order and sign of its rows are judged by the noise room (V19). */
-export async function readNoise(declaration: Extract<NoiseDeclaration, { kind: 'table' }>, openFile: OpenFile): Promise<Result<ReadNoise, Problem[]>> {
-  const read = await readCurveTable(declaration, openFile);
+export async function readNoise(declaration: Extract<NoiseDeclaration, { kind: 'table' }>, openFile: OpenFile, readHdf5: ReadHdf5 | null = null): Promise<Result<ReadNoise, Problem[]>> {
+  const read = await readCurveTable(declaration, openFile, readHdf5);
   if (!read.ok) return read;
   const { table, columns } = read.value;
   const findings = notFiniteFindings(table, columns, 'Hz');
@@ -53,9 +54,9 @@ export async function readNoise(declaration: Extract<NoiseDeclaration, { kind: '
   });
 }
 
-async function readCurveTable({ file, format, columns }: Extract<NoiseDeclaration, { kind: 'table' }>, openFile: OpenFile): Promise<Result<{ readonly table: NumberTable; readonly columns: readonly Column[] }, Problem[]>> {
-  if (format === 'npy') {
-    const arrays = await readArrays(file, { layout: { format, parts: [], time: null }, declared: columns, leastL: 0 }, openFile, null);
+async function readCurveTable({ file, arrays: layout, columns }: Extract<NoiseDeclaration, { kind: 'table' }>, openFile: OpenFile, readHdf5: ReadHdf5 | null): Promise<Result<{ readonly table: NumberTable; readonly columns: readonly Column[] }, Problem[]>> {
+  if (layout) {
+    const arrays = await readArrays(file, { layout, declared: columns, leastL: 0 }, openFile, readHdf5);
     return arrays.ok ? ok({ table: arrays.value.tables[0]!.table, columns: arrays.value.columns }) : arrays;
   }
   const read = await readTable(file, columns, openFile);

@@ -46,7 +46,7 @@ export async function readInputs(sheet: ClaimSheet, files: HashedFiles, onFile: 
   }
   for (const declaration of sheet.noise.values()) {
     onFile(`reading ${declaration.name}`);
-    const read = await readCurve(declaration, files);
+    const read = await readCurve(declaration, files, readHdf5);
     if (read.ok) noise.set(declaration.name, read.value);
     else problems.push(...read.error);
   }
@@ -61,9 +61,9 @@ function numbersIn(waveform: Waveform | null): number {
   return axis.length * (content.kind === 'modes' ? 1 + 2 * content.modes.length : 3);
 }
 
-async function readCurve(declaration: NoiseDeclaration, files: HashedFiles): Promise<Result<Found<NoiseCurve>, Problem[]>> {
+async function readCurve(declaration: NoiseDeclaration, files: HashedFiles, readHdf5: ReadHdf5 | null): Promise<Result<Found<NoiseCurve>, Problem[]>> {
   if (declaration.kind === 'built-in') return ok({ input: builtInCurve(declaration.curve) ?? null, findings: [], writing: [] });
-  const read = await readNoise(declaration, files.open);
+  const read = await readNoise(declaration, files.open, readHdf5);
   if (!read.ok) return read;
   if (read.value.noise === null) return ok({ input: null, findings: read.value.findings, writing: [] });
   const curve = tabulatedCurve(read.value.noise);

@@ -54,5 +54,5 @@ export interface WaveformDeclaration {
 export type RunFacts = Pick<Waveform, 'series' | 'resolution' | 'extractionRadiusM' | 'radiusType' | 'timeLabel' | 'tetrad'>;
 
 export type NoiseDeclaration =
-  | { readonly kind: 'table'; readonly name: string; readonly file: string; readonly format: 'text' | 'npy'; readonly columns: readonly Column[]; readonly sided: 'one' | 'two' }
+  | { readonly kind: 'table'; readonly name: string; readonly file: string; /** For files of arrays; null for text. */ readonly arrays: ArrayLayout | null; readonly columns: readonly Column[]; readonly sided: 'one' | 'two' }
   | { readonly kind: 'built-in'; readonly name: string; readonly curve: string };

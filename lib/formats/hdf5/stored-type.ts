@@ -20,7 +20,7 @@ export function elementTypeOf(meta: Metadata, field: string | null): ElementType
 }
 
 function baseOf({ type, size, signed }: Metadata): NumberBase | null {
-  if (type === float && (size === 4 || size === 8)) return `f${size}`;
+  if (type === float && (size === 2 || size === 4 || size === 8)) return `f${size}`;
   if (type === whole && (size === 1 || size === 2 || size === 4 || size === 8)) return `${signed ? 'i' : 'u'}${size}`;
   return null;
 }

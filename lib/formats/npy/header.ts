@@ -52,7 +52,7 @@ function parseFacts(text: string, dataAt: number): NpyHeader | HeaderFault {
 }
 
 const numbers = /^'([<>=|])([fiuc])(\d{1,2})'$/;
-const kinds = 'real or complex numbers of four or eight bytes a part (f4, f8, c8, c16), or whole numbers';
+const kinds = 'real or complex numbers (f2, f4, f8, c8, c16), or whole numbers';
 
 function elementType(descr: string): ElementType | HeaderFault {
   if (descr === '[') return fault('an array of records', kinds, 'Save its fields as arrays of their own.');
@@ -61,7 +61,7 @@ function elementType(descr: string): ElementType | HeaderFault {
   const [, order = '', kind = '', size = ''] = found ?? [];
   const complex = kind === 'c';
   const base = complex ? `f${Number(size) / 2}` : `${kind}${size}`;
-  const allowed = /^(f[48]|[iu][1248])$/.test(base);
+  const allowed = complex ? /^f[48]$/.test(base) : /^(f[248]|[iu][1248])$/.test(base);
   if (!found || !allowed) return fault(`numbers of the type ${quote(descr.replace(/'/g, ''))}`, kinds, 'Convert the array, for example with astype(float), and save it again.');
   return elementOf(base as NumberBase, order !== '>', complex);
 }

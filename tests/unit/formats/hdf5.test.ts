@@ -9,7 +9,9 @@ import { hdf5Source } from '@/lib/formats/hdf5/hdf5-source';
 import { hdf5Structure } from '@/lib/formats/hdf5/hdf5-structure';
 import { openOneFile } from '@/lib/formats/hdf5/one-file';
 import { parseSelection } from '@/lib/formats/hdf5/selection';
-import { fixture, fixturePath, inPieces, modesAndErrors, open } from './array-waves';
+import { parseNoise } from '@/lib/claims/noise';
+import { readNoise } from '@/lib/formats/read-noise';
+import { fixture, fixturePath, inPieces, modesAndErrors, open, times } from './array-waves';
 
 // One thread reads one file; this one reads the files here one by one, so that each test costs no thread.
 const descriptor = openSync(fixturePath('layouts.h5'), 'r');
@@ -43,6 +45,24 @@ describe('an HDF5 file is read, whatever its layout', () => {
     expect(Math.max(...found.map(([, far]) => far))).toBeLessThan(within);
   });
 
+  it('half precision, to the last bit', async () => {
+    const { waveform } = await layouts({ datasets: { plus: '/half' }, time: '/t' });
+    expect(waveform?.content.kind === 'line-of-sight' && waveform.content.plus).toEqual(times);
+    expect(waveform?.significantDigits).toBe(3);
+  });
+
+  it('a noise curve, from vectors or from columns of an array', async () => {
+    const curveOf = async (datasets: Record<string, string>) => {
+      const declaration = parseNoise('S', { file: 'l.h5', datasets }, [], []);
+      const read = declaration?.kind === 'table' ? await readNoise(declaration, inPieces({ 'l.h5': fixture('layouts.h5') }), here) : null;
+      return read?.ok ? read.value.noise : null;
+    };
+    const wave = await curveOf({ f: '/t', psd: '/amplitude' });
+    expect([wave?.f, wave?.meaning, wave?.values.length]).toEqual([times, 'psd', 40]);
+    const rows = await curveOf({ f: '/R0100/l2_m2[:,0]', asd: '/R0100/l2_m2[:,1]' });
+    expect([rows?.f[4], rows?.values[0]]).toEqual([1, 0.5]);
+  });
+
   it('whole numbers of two bytes', async () => {
     const { waveform } = await layouts({ datasets: { plus: '/whole[:,1]', cross: '/whole[:,2]' }, time: '/whole[:,0]' });
     expect(waveform?.content.kind === 'line-of-sight' && [waveform.content.plus[7], waveform.content.cross?.[7]]).toEqual([2, -7]);
@@ -63,7 +83,6 @@ describe('an HDF5 dataset is refused with its reason', () => {
     [{ datasets: { '2,2': '/all' }, time: '/t' }, 'saw 40×3 complex; expected N×3 (t, re, im), N×2 with "time", or one complex vector with "time". For all modes in one array, name it "data"'],
     [{ datasets: { '2,2': '/amplitude' }, time: '/t' }, 'Give its real and imaginary parts as datasets of their own'],
     [{ datasets: { data: '/complex/l2_m2' }, time: '/t' }, 'saw 40 complex; expected L×N complex numbers, or L×N×2 real ones.'],
-    [{ datasets: { plus: '/half' }, time: '/t' }, 'saw numbers of 2 bytes; expected real, complex or whole numbers'],
     [{ datasets: { plus: '/words' }, time: '/t' }, 'saw text; expected'],
     [{ datasets: { plus: '/nothing' }, time: '/t' }, 'saw a dataset without numbers'],
     [{ datasets: { plus: '/one' }, time: '/t' }, 'saw a single number; expected one real vector'],
