@@ -1,7 +1,8 @@
 import type { NoiseDeclaration, WaveformDeclaration } from '@/lib/engine/contract/layout';
+import type { Quantity } from '@/lib/engine/contract/quantity';
 import type { Problem } from '@/lib/kernel/problem';
 import type { Catalogue } from './catalogue';
-import { checkPart } from './check-part';
+import { checkPart, notRefused, soundEntries } from './check-part';
 import type { Claim } from './claim';
 import { declaredRoles, missingSettings, parseNoiseName, parseRoles, settingAgainstWaveforms, variableProblems } from './claim-inputs';
 import { parseSettings, parseSweep, sweptBandProblems, type Sweep } from './claim-settings';
@@ -19,18 +20,25 @@ export interface Surroundings {
 
 const known = Object.keys(claimSchema.shape);
 
-/** One entry of `claims`, or null beside every problem it has. */
+/** One entry of `claims`, or null beside every problem it has: an entry that is off hides no fault of the others. */
 export function parseClaim(value: unknown, index: number, around: Surroundings, problems: Problem[]): Claim | null {
   const path = ['claims', index];
-  const before = problems.length;
-  const raw = checkPart(claimSchema, value, path, known, problems);
+  const whole = checkPart(claimSchema, value, path, known, problems);
+  const raw = whole ?? soundEntries(claimSchema, value);
   if (raw === null) return null;
-  const quantity = around.catalogue.quantities.get(raw.quantity);
+  const quantity = raw.quantity === undefined ? undefined : around.catalogue.quantities.get(raw.quantity);
   if (!quantity) {
-    problems.push(unknownQuantity(raw.quantity, pointer(...path, 'quantity'), around.catalogue));
+    problems.push(...withoutQuantity(raw, path, around));
     return null;
   }
-  const of = parseRoles(raw.of, quantity, around.waveforms, [...path, 'of'], problems);
+  const found: Problem[] = [];
+  const claim = parseParts(raw, quantity, path, around, found);
+  problems.push(...found);
+  return whole === null || found.length > 0 ? null : { id: whole.id, tolerance: whole.tolerance ?? null, ...claim };
+}
+
+function parseParts(raw: Partial<RawClaim>, quantity: Quantity, path: readonly PropertyKey[], around: Surroundings, problems: Problem[]): Omit<Claim, 'id' | 'tolerance'> {
+  const of = raw.of === undefined ? {} : parseRoles(raw.of, quantity, around.waveforms, [...path, 'of'], problems);
   const noise = parseNoiseName(raw.noise, quantity, [...around.noise.keys()], path, problems);
   const settings = parseSettings(raw.settings ?? {}, quantity, around.catalogue, [...path, 'settings'], problems);
   const over = raw.over === undefined ? null : parseSweep(raw.over, quantity, raw.settings ?? {}, around.catalogue, [...path, 'over'], problems);
@@ -39,9 +47,15 @@ export function parseClaim(value: unknown, index: number, around: Surroundings, 
   const declared = declaredRoles(of, around.waveforms);
   problems.push(...variableProblems(quantity, declared, path), ...settingAgainstWaveforms(settings, over, declared, path));
   const rolesKnown = quantity.roles.every((role) => (quantity.optionalRoles ?? []).includes(role) || (declared[role]?.length ?? 0) > 0);
-  if (rolesKnown) problems.push(...missingSettings(quantity, settings, over, declared, path));
-  if (problems.length > before) return null;
-  return { id: raw.id, quantity, of, noise, settings, over, claimed, tolerance: raw.tolerance ?? null };
+  if (rolesKnown) problems.push(...notRefused(missingSettings(quantity, settings, over, declared, path), raw.settings ?? {}, [...path, 'settings']));
+  return { quantity, of, noise, settings, over, claimed };
+}
+
+/** Which waveforms and settings it may name hangs on the quantity; what is claimed does not. */
+function withoutQuantity(raw: Partial<RawClaim>, path: readonly PropertyKey[], { catalogue }: Surroundings): Problem[] {
+  const problems = raw.quantity === undefined ? [] : [unknownQuantity(raw.quantity, pointer(...path, 'quantity'), catalogue)];
+  if (raw.over === undefined) parseClaimedList(raw, path, null, problems);
+  return problems;
 }
 
 function unknownQuantity(id: string, where: string, catalogue: Catalogue): Problem {
@@ -57,12 +71,9 @@ const isBound = (claimed: unknown): boolean => typeof claimed === 'object' && cl
  * One claimed entry a point: an array for a sweep, a single entry otherwise. A tolerance beside an
  * inequality is read and has no part in its verdict (settings.md section 1).
  */
-function parseClaimedList(raw: RawClaim, path: readonly PropertyKey[], over: Sweep | null, problems: Problem[]): Claimed[] {
+function parseClaimedList(raw: Partial<RawClaim>, path: readonly PropertyKey[], over: Sweep | null, problems: Problem[]): Claimed[] {
   const at = [...path, 'claimed'];
-  if (raw.claimed === undefined) {
-    problems.push({ code: 'claims/missing', where: pointer(...at), saw: 'nothing', expected: 'the claimed value' });
-    return [];
-  }
+  if (raw.claimed === undefined) return [];
   const swept = raw.over !== undefined;
   const listed = over ? raw.over?.[over.setting] : undefined;
   const points = Array.isArray(listed) ? listed.length : 0;

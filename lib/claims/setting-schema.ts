@@ -60,7 +60,9 @@ function rangeWords(shape: { min?: number; max?: number; above?: number }): stri
   return shape.min === undefined ? '' : ` from ${tidy(shape.min)}${max}`;
 }
 
-const tidy = (x: number): string => (Number.isInteger(x / Math.PI) && x !== 0 ? `${x / Math.PI === 1 ? '' : x / Math.PI === -1 ? '−' : String(x / Math.PI).replace('-', '−')}π` : String(x));
+/** Every double beyond 10¹⁶ is a whole multiple of π to the last bit: only small ones are meant as such. */
+const isTurns = (x: number): boolean => x !== 0 && Math.abs(x) < 100 && Number.isInteger(x / Math.PI);
+const tidy = (x: number): string => (isTurns(x) ? `${x / Math.PI === 1 ? '' : x / Math.PI === -1 ? '−' : String(x / Math.PI).replace('-', '−')}π` : Math.abs(x) < 1e15 ? String(x) : x.toExponential().replace('e+', 'e'));
 
 function bounded(shape: { min?: number; max?: number; above?: number }, error: string): z.ZodNumber {
   let schema = z.number({ error });

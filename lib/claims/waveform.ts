@@ -3,7 +3,7 @@ import type { Column, RunFacts, SourceFile, WaveformDeclaration } from '@/lib/en
 import type { ModeIndex } from '@/lib/engine/contract/settings';
 import type { Problem } from '@/lib/kernel/problem';
 import { arrayWords } from './arrays';
-import { checkPart } from './check-part';
+import { checkPart, notRefused, soundEntries } from './check-part';
 import { layoutProblems, modeFaults, waveformColumns } from './columns';
 import { pathProblem } from './file-path';
 import { describe, pointer } from './pointer';
@@ -16,15 +16,15 @@ const refused = (where: string, value: unknown, expected: string, hint?: string)
 /** One entry of `waveforms`: what the hall needs to read its files, or null beside the problems. */
 export function parseWaveform(name: string, value: unknown, problems: Problem[]): WaveformDeclaration | null {
   const path = ['waveforms', name];
-  const raw = checkPart(waveformSchema, value, path, known, problems);
+  const whole = checkPart(waveformSchema, value, path, known, problems);
+  const raw: RawWaveform | null = whole ?? soundEntries(waveformSchema, value);
   if (raw === null) return null;
-  const before = problems.length;
-  problems.push(...kindProblems(raw, path), ...unitProblems(raw, path));
-  const files = filesOf(raw, path, problems);
+  const found = [...kindProblems(raw, path), ...unitProblems(raw, path)];
+  const files = filesOf(raw, path, found);
   const format = formatOf(raw);
-  const { columns, arrays } = format === 'text' ? { columns: columnsOf(raw, path, problems), arrays: null } : arrayWords(raw, format, leastL(raw), path, problems);
-  if (problems.length > before) return null;
-  return declarationOf(name, raw, files, columns, arrays);
+  const { columns, arrays } = format === 'text' ? { columns: columnsOf(raw, path, found), arrays: null } : arrayWords(raw, format, leastL(raw), path, found);
+  problems.push(...(whole === null ? notRefused(found, value as object, path, known) : found));
+  return whole === null || found.length > 0 ? null : declarationOf(name, raw, files, columns, arrays);
 }
 
 function declarationOf(name: string, raw: RawWaveform, files: SourceFile[], columns: Column[], arrays: ArrayLayout | null): WaveformDeclaration {

@@ -17,6 +17,7 @@ import { offeredReadings, type ReadingsByClaim } from './explain/offered-reading
 import type { Weighed } from './explain/subject';
 import { keptGuesses, sheetGuesses } from './guesses/sheet-guesses';
 import { measureClaim, resolveInputs } from './measure-claim';
+import { missingFiles, placed } from './missing-files';
 import { readInputs, type Inputs } from './read-inputs';
 import type { FiguresByClaim, ResultClaim, ResultDocument } from './result';
 import { weighClaim } from './weigh-claim';
@@ -59,11 +60,11 @@ const measuringShare = 0.6;
 
 export async function reproduceWith(catalogue: Catalogue, source: Source, options: ReproduceOptions): Promise<Result<Reproduced, Problem[]>> {
   const sheet = parseClaimSheet(source.sheetJson, catalogue);
-  if (!sheet.ok) return sheet;
+  if (!sheet.ok) return err([...sheet.error, ...(await missingFiles(source.sheetJson, source.openFile))]);
   try {
     const files = new HashedFiles(source.openFile, options.digest);
     const inputs = await readInputs(sheet.value, files, fileProgress(sheet.value, options), source.readHdf5);
-    if (!inputs.ok) return inputs;
+    if (!inputs.ok) return err(await placed(inputs.error, source.sheetJson, source.openFile));
     const measured = measureAll(sheet.value, inputs.value, options);
     // A variation asks what a number would be, not what the files say.
     return measured.ok && options.otherwise === undefined ? ok(withGuesses(measured.value, source, sheet.value, inputs.value)) : measured;

@@ -200,3 +200,29 @@ describe('the text of a sheet', () => {
     }), { seed: 8, numRuns: 3000 });
   });
 });
+
+describe('one entry that is off hides no fault of the others', () => {
+  it('in a claim', () => {
+    const told = problemsOf(withClaim({ id: 'C1', quantity: 'match', of: { a: 'A', b: 'nobody' }, noise: 'S', settings: { totalMassMsun: -5, fLowHertz: 20 }, claimed: 'much', tolerance: -1, colour: 'red' }));
+    const places = ['/claims/0/claimed', '/claims/0/colour', '/claims/0/of/b', '/claims/0/settings/fLowHertz', '/claims/0/settings/totalMassMsun', '/claims/0/tolerance'];
+    expect(told.map((line) => line.split(':')[0]).sort()).toEqual(places);
+  });
+
+  it('in a claim whose quantity nobody knows', () => {
+    expect(problemsOf(withClaim(match({ quantity: 'matsch', claimed: 'much' }))).map((line) => line.split(':')[0])).toEqual(['/claims/0/quantity', '/claims/0/claimed']);
+  });
+
+  it('in a waveform', () => {
+    const told = problemsOf(withWaveform({ file: '../a.txt', columns: ['t', 're22', 'foo'], psi4Factor: 3, timeUnit: 's' }));
+    expect(told.map((line) => line.split(':')[0]).sort()).toEqual(['/waveforms/X/amplitudeUnit', '/waveforms/X/columns/2', '/waveforms/X/file', '/waveforms/X/psi4Factor']);
+  });
+
+  it('and what was refused is not called missing as well', () => {
+    expect(problemsOf(withWaveform({ file: 7, columns: ['t', 're22', 'im22'] })).map((line) => line.split(' saw')[0])).toEqual(['/waveforms/X/file:']);
+  });
+
+  it('a claim without a number is told so in words of the format', () => {
+    const { claimed: _, ...bare } = match();
+    expect(problemsOf(withClaim(bare))).toEqual(['/claims/0/claimed: saw nothing; expected the claimed value.']);
+  });
+});

@@ -195,7 +195,16 @@ describe('a sheet is refused as a whole', () => {
     const shared = sheet([claim()], { waveforms: { A: { file: 'a.txt', columns: ['t', 're22', 'im22'] }, B: { file: 'a.txt', columns: ['t', 're22', 'im22'] } } });
     expect(await refusals(shared, plain, { 'a.txt': '0 1 2\n1 x 4\n' })).toEqual([
       'a.txt:2: saw "x" in column re22; expected a decimal number such as -1.25e-21.',
-      'noise.txt: saw no file of this name; expected the file beside the claim sheet. Add the file, or correct its name in the sheet.',
+      '/noise/S/file: saw no file "noise.txt"; expected the file beside the claim sheet. Add the file, or correct its name in the sheet.',
+    ]);
+  });
+
+  it('with the files that are not there beside what is wrong with the sheet itself', async () => {
+    const waveforms = { A: { file: 'a.txt', columns: ['t', 're22', 'im22'] }, B: { files: { '2,2': 'b22.txt', '2,1': 'b21.txt' }, columns: ['t', 're', 'im'] } };
+    expect(await refusals(sheet([claim({ claimed: 'much' })], { waveforms }), plain, { 'a.txt': '0 1 2\n1 3 4\n', 'b21.txt': '0 1 2\n' })).toEqual([
+      expect.stringMatching(/^\/claims\/0\/claimed: saw "much"/),
+      '/waveforms/B/files/2,2: saw no file "b22.txt"; expected the file beside the claim sheet. Add the file, or correct its name in the sheet.',
+      '/noise/S/file: saw no file "noise.txt"; expected the file beside the claim sheet. Add the file, or correct its name in the sheet.',
     ]);
   });
 
