@@ -28,7 +28,7 @@ const cases: readonly Case[] = [
 
 describe.runIf(isThere)(
   title(
-    'energies of the reference sheets (required: published for run 3, closed forms; independent derivation for the data of arXiv:1904.04831, integrated by a separate numpy script)',
+    'energies of the reference sheets (required: published for run 3, closed forms; independent derivation for the data of arXiv:1904.04831, cubic splines through the samples on quarters of the least step, news and ψ₄ by a transform of twice the length with the floor, trapezoids, in numpy and scipy)',
   ),
   () => {
     it.each(cases)('%s, %s, by both routes', (sheet, claim, settings) => {

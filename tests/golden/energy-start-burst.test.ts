@@ -12,7 +12,7 @@ const wave = modeSet(clean.t, clean.modes, 'strain', binary);
 const bursting = modeSet(noisy.t, noisy.modes, 'strain', binary);
 const valueOf = (...args: Parameters<typeof measureEnergyOf>): number => measureEnergyOf(...args).points[0]?.value ?? Number.NaN;
 
-describe('start-up radiation (required: independent derivation; the same signal and burst, computed by another program)', () => {
+describe('start-up radiation (required: independent derivation; cubic splines through the samples of each mode, values and slopes on eight points a step, trapezoids, in numpy and scipy: 0.039906, with the burst 0.040425, the burst alone 5.188e-4 about t = 75 M, 98.33 % in (2,±2); before the start the binding energy at 1PN, 8.687e-3)', () => {
   it('is found where it was put, with its energy, and asks for an answer', () => {
     const { findings } = measureEnergyOf(bursting);
     const burst = findings.find(({ code }) => code === 'engine/startup-burst');

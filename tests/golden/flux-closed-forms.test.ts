@@ -130,8 +130,12 @@ describe('what is radiated', () => {
   });
 });
 
-/** A separate numpy program has these from the same closed-form signals (domain reference, Q13–Q15, D7); it asks 2 % of a recoil. */
-describe('the demonstration signals (required: independent derivation; a separate numpy program)', () => {
+/**
+ * Values of the domain reference, Q13–Q15 and D7, which asks 2 % of a recoil. Found again from the same samples by cubic splines of each
+ * mode, values and slopes on eight points a step, sums over neighbouring modes and trapezoids, in numpy and scipy: J 0.40977 and 0.34622,
+ * peak 1.12264e-3, recoil 140.7 km/s towards 134°, with the wrong mirror 50.1 km/s towards 74°.
+ */
+describe('the demonstration signals (required: independent derivation; cubic splines, sums over neighbouring modes, trapezoids)', () => {
   const wave = (massRatio: number): Waveform => {
     const { t, modes } = synthesise({ massRatio, chi1z: 0, chi2z: 0, mOmega0: 0.02, stepM: 0.4, modes: allModes });
     return modeSet(t, modes, 'strain', { massRatio, chi1z: 0, chi2z: 0 });

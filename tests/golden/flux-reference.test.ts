@@ -32,7 +32,7 @@ describe.runIf(isThere)(title('the open simulation (required: published; arXiv:1
   });
 });
 
-describe.runIf(isThere)(title('angular momentum, recoil and peak luminosity of the reference sheets (required: published for run 3, closed forms and symmetry; independent derivation for the data of arXiv:1904.04831, integrated by a separate numpy script)'), () => {
+describe.runIf(isThere)(title('angular momentum, recoil and peak luminosity of the reference sheets (required: published for run 3, closed forms and symmetry; independent derivation for the data of arXiv:1904.04831, cubic splines through the samples on quarters of the least step, news and ψ₄ by a transform of twice the length with the floor, sums over neighbouring modes, trapezoids, in numpy and scipy)'), () => {
   it.each(cases)('%s, %s, by both routes', (sheet, claim, quantity, settings) => {
     const expected = expectedClaim(sheet, claim);
     const [figure] = expected.points;

@@ -4,7 +4,11 @@ import { beforeAll, describe, expect, it } from 'vitest';
 import type { ResultClaim } from '@/lib/pipeline/result';
 import { runFolder } from './run-folder';
 
-/** Required: independent derivation — sheets with expected figures from closed forms and a plain numpy reading of the definitions; they lie outside the project. */
+/**
+ * Required: independent derivation — sheets with expected figures from closed forms and one numpy reading of the definitions; they lie outside the project. Its methods: cubic splines in time, one
+ * padded transform of at least 2²⁰ points, trapezoids with linear parts of cells at the band's edges, noise along straight lines in the logarithms, Brent's and bounded
+ * minimisation for roots and maxima.
+ */
 const sheets = join('..', 'shared', 'reference', 'sheets');
 
 interface Figure {

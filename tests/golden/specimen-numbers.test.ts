@@ -221,7 +221,11 @@ describe('what a spin-blind search sees', () => {
   });
 });
 
-/** Required: independent derivation — a numpy evaluation has 42.7 from these signals, and 1.142 from a record that begins earlier; 1.14341 is what a separate scipy script finds in this file (its method was not written down). */
+/**
+ * Required: independent derivation — a numpy evaluation has 42.7 from these signals, and 1.142 from a record that begins earlier. 1.1434073 is found in this file by
+ * numpy and scipy: the tapered samples in one padded transform of 2²⁰ points, a trapezoid from 20 Hz with linear parts of cells at the edges, the curve G2 as a table
+ * of 16000 points along straight lines in the logarithms, distances by adaptive quadrature, the last crossing of 8 in redshift by Brent's method.
+ */
 describe('a long signal from a short record', () => {
   beforeAll(async () => void (claims = await runFolder(folder('long-signal'))), 300_000);
   it('recomputes 42.7 with the restricted amplitude, and the horizon of this record, 0.001 beyond that of a longer one', () => {

@@ -32,7 +32,7 @@ const cases: readonly (readonly [sheet: string, ids: readonly string[]])[] = [
   ['run5-alignment', ['amplitude', 'phase']],
 ];
 
-describe.runIf(isThere).each(cases)(title('the reference sheet %s (required: independent derivation; closed forms, continued fractions, and a separate numpy script that reads the definitions plainly)'), (name, ids) => {
+describe.runIf(isThere).each(cases)(title('the reference sheet %s (required: independent derivation; ringdown: peak by a parabola through five samples, straight lines through phase and log amplitude in the window by least squares; alignment: cubic splines of phase and amplitude, the shift by bounded minimisation, differences on 20001 points; closed forms and continued fractions)'), (name, ids) => {
   const folder = isThere ? mkdtempSync(join(tmpdir(), 'tones-')) : '';
   const expected = isThere ? (json(sheets, name, 'expected.json') as { claims: Record<string, Expected> }).claims : {};
   let claims: ReadonlyMap<string, ResultClaim> = new Map();
