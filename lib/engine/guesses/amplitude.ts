@@ -13,8 +13,8 @@ const FITS = Math.log(1.2);
 const order: Readonly<Record<RadiationVariable, number>> = { strain: 0, news: 1, psi4: 2 };
 const variables = ['strain', 'news', 'psi4'] as const;
 const factors = [
-  { factor: 2, says: 'twice the declared' },
-  { factor: 0.5, says: 'half the declared' },
+  { factor: 2, says: 'twice what is declared' },
+  { factor: 0.5, says: 'half of what is declared' },
   { factor: FACE_ON, says: 'the face-on angular factor 0.631 already in it' },
 ] as const;
 
@@ -62,6 +62,6 @@ export function guessAmplitude(name: string, { omega, amplitude, atM }: Inspiral
     ...best.guess,
     declared,
     confidence: rough ? 0.75 : off(best) < CLEAR ? best.most : 0.6,
-    reason: `At MΩ = ${short(omega)} (t = ${short(atM, 6)} M) the (2,2) amplitude of ${name} is ${scientific(measured, 3)} of leading order; ${declared} is expected at ${scientific(USUAL * (2 * omega) ** order[declared], 3)}, ${best.guess.agrees ? 'as declared' : best.guess.value === 'at-a-distance' ? 'a strain with M/D in it lies below 10⁻¹²' : `${best.guess.proposed} at ${scientific(best.expected, 3)}`}.`,
+    reason: `At MΩ = ${short(omega)} (t = ${short(atM, 6)} M) the (2,2) amplitude of ${name} is ${scientific(measured, 3)} of leading order; ${declared} is expected at ${scientific(USUAL * (2 * omega) ** order[declared], 3)}, ${best.guess.agrees ? 'and is so' : best.guess.value === 'at-a-distance' ? 'a strain with M/D in it lies below 10⁻¹²' : `${best.guess.proposed} at ${scientific(best.expected, 3)}`}.`,
   };
 }

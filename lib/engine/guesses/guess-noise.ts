@@ -69,7 +69,7 @@ function versionGuess(column: NoiseColumn): Guess[] {
 
 function byFit(column: NoiseColumn, fit: CurveFit): Guess[] {
   const confidence = fit.off <= SAME ? (fit.named ? 0.97 : 0.95) : fit.named ? 0.85 : 0.75;
-  const read = columnGuess(column, fit.meaning, confidence, `Read so, it is ${fit.known.id} (${fit.known.title}), amplitude densities ${fit.inOctaves}`);
+  const read = columnGuess(column, fit.meaning, confidence, `Read as ${fit.meaning} it is ${fit.known.id} (${fit.known.title}), amplitude densities ${fit.inOctaves}`);
   if (fit.angular) return [...(read.agrees ? [] : [read]), frequencyGuess(column, fit, confidence)];
   const version = read.agrees && fit.off > SAME && fit.named && fit.power === 1 ? versionGuess(column) : [];
   return [read, sidedGuess(column, fit, confidence), ...version];

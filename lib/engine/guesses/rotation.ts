@@ -41,11 +41,11 @@ export function guessRotation({ name, domain, content }: Waveform): Guess | null
   return {
     about: 'rotation',
     convention: 'C22',
-    declared: 'as declared, H₂₂ ∝ e^{−iφ}',
-    proposed: agrees ? 'as declared, H₂₂ ∝ e^{−iφ}' : 'the other sense, H₂₂ ∝ e^{+iφ}',
+    declared: 'H₂₂ turning as e^(−iφ)',
+    proposed: agrees ? 'H₂₂ turning as e^(−iφ)' : 'the other sense, H₂₂ turning as e^(+iφ)',
     value: agrees ? 'as-declared' : 'reversed',
     agrees,
     confidence: share >= CLEAR ? (both ? 0.8 : 0.95) : 0.6,
-    reason: `Over the middle half of ${name} arg H₂₂ turns by ${short(median).replace('-', '−')} rad a sample (median; ${percent(share)} of the steps the same way), read as declared; a negative number is expected.${both ? ' Labels m and −m that changed places (C23) would show the same.' : ''}`,
+    reason: `Over the middle half of ${name} arg H₂₂ turns by ${short(median).replace('-', '−')} rad a sample (median; ${percent(share)} of the steps the same way), read as the sheet says; a negative number is expected.${both ? ' Labels m and −m that changed places (C23) would show the same.' : ''}`,
   };
 }

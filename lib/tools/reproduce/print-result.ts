@@ -11,7 +11,14 @@ const summary = { 'all-agree': 'All claims agree.', 'some-agree': 'Some claims a
 export function printResult(result: ResultDocument): string {
   const heading = `${result.title === '' ? 'Claim sheet' : result.title}  (engine ${result.engine})`;
   const closing = summary[submissionVerdict(result.claims.map((claim) => claim.verdict))];
-  return `${[heading, ...result.claims.map(printClaim), closing].join('\n\n')}\n`;
+  return `${[heading, ...result.claims.map(printClaim), ...guessLines(result), closing].join('\n\n')}\n`;
+}
+
+/** Only what speaks against the words beside a file; it moved no number. */
+function guessLines({ guesses = [] }: ResultDocument): string[] {
+  const against = guesses.filter(({ agrees, value }) => !agrees && value !== null);
+  if (against.length === 0) return [];
+  return [['What the files say against the words beside them; the numbers above take the words as they are:', ...against.map(({ field, standing, value, proposed, confidence, reason }) => `  ${field} (${standing}: ${value}): ${proposed}, confidence ${confidence}. ${reason}`)].join('\n')];
 }
 
 function printClaim(claim: ResultClaim): string {

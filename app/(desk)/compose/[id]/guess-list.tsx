@@ -15,6 +15,8 @@ export interface GuessDesk {
   readonly guesses: readonly SheetGuess[];
   readonly answerTo: (guess: SheetGuess) => string | null;
   readonly onTake: (guess: SheetGuess) => void;
+  /** Several at once: what nobody declared and the data bear out. */
+  readonly onTakeAll: (guesses: readonly SheetGuess[]) => void;
   /** The authors' word; an empty one asks again. */
   readonly onAnswer: (guess: SheetGuess, words: string) => void;
   readonly busy: boolean;
@@ -31,11 +33,13 @@ export function GuessList({ part, name, desk }: { readonly part: SheetGuess['par
   const of = desk.guesses.filter((guess) => guess.part === part && guess.name === name).map((guess) => ({ guess, state: guessState(guess, desk.answerTo(guess) !== null) }));
   if (of.length === 0) return null;
   const asked = of.filter(({ state }) => state === 'unanswered' || state === 'contradicted');
+  const alike = asked.flatMap(({ guess, state }) => (state === 'unanswered' && guess.agrees && guess.changes !== null && guess.changes.length > 0 ? [guess] : []));
   const settled = of.filter(({ state }) => !asked.some((one) => one.state === state));
   return (
     <section aria-labelledby={heading} className="grid gap-2 border-t border-hair pt-3">
       <h3 id={heading} className="text-small font-semibold">What the data say of {name}</h3>
       {asked.length > 0 && <ul className="grid gap-0">{asked.map(({ guess, state }) => <Asked key={`${guess.field} ${guess.about}`} guess={guess} state={state} desk={desk} />)}</ul>}
+      {alike.length > 1 && <div><Button size="low" onClick={() => desk.onTakeAll(alike)}>Confirm the {alike.length} of {name} that the data bear out</Button></div>}
       {settled.length > 0 && (
         <Disclosure summary={`${settled.length} settled: ${settled.map(({ guess }) => topicWords[guess.about].toLowerCase()).join(', ')}`}>
           <ul className="grid gap-3">{settled.map(({ guess, state }) => <Settled key={`${guess.field} ${guess.about}`} guess={guess} state={state} desk={desk} />)}</ul>

@@ -21,13 +21,15 @@ interface DeskProps {
 /** The author's answers to guesses: what is confirmed goes into the form, what is not so is kept beside the draft. */
 export function useGuessDesk({ id, form, guesses, answers, saveNow }: DeskProps): { readonly desk: GuessDesk; readonly trouble: readonly string[] | null } {
   const { busy, trouble, run } = useAct(answerFinding);
-  const onTake = (guess: SheetGuess) => {
-    const undo = takeGuess(guess.changes ?? [], form);
-    say(`${topicWords[guess.about]} of ${guess.name} is declared as the data say.`, undo);
+  const onTakeAll = (taken: readonly SheetGuess[]) => {
+    const undo = takeGuess(taken.flatMap(({ changes }) => changes ?? []), form);
+    const what = taken.map(({ about }) => topicWords[about]).join(', ');
+    say(`${what} of ${taken[0]?.name ?? ''}: declared as the data say.`, undo);
   };
+  const onTake = (guess: SheetGuess) => onTakeAll([guess]);
   const onAnswer = async (guess: SheetGuess, words: string) => {
     // The server knows only names that were saved.
     if (await saveNow()) await run({ id, finding: { ...namedGuess(guess), answer: words } });
   };
-  return { desk: { guesses, answerTo: (guess) => answerTo(answers, namedGuess(guess)), onTake, onAnswer: (guess, words) => void onAnswer(guess, words), busy }, trouble };
+  return { desk: { guesses, answerTo: (guess) => answerTo(answers, namedGuess(guess)), onTake, onTakeAll, onAnswer: (guess, words) => void onAnswer(guess, words), busy }, trouble };
 }

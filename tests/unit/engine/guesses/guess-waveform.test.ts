@@ -56,7 +56,7 @@ describe('guesses from the samples of a waveform', () => {
     expect(brief(contradictions(inM(house(), { ...known(), variable: 'psi4' })))).toEqual(['variable: strain']);
   });
 
-  it.each([[2, 'twice the declared'], [0.5, 'half the declared'], [0.6308, 'the face-on angular factor 0.631 already in it']])('tell a factor of %d', (factor, proposed) => {
+  it.each([[2, 'twice what is declared'], [0.5, 'half of what is declared'], [0.6308, 'the face-on angular factor 0.631 already in it']])('tell a factor of %d', (factor, proposed) => {
     expect(brief(contradictions(inM(scaled(factor), known())))).toEqual([`normalisation: ${proposed}`]);
   });
 

@@ -36,6 +36,12 @@ describe('a result as a table', () => {
   };
   const result: ResultDocument = { format: 'counterfoil-result/1', engine: '1.0.0', title: 'Spin is visible', files: [], claims: [claim] };
 
+  it('says what the files say against the words beside them, and nothing of what they bear out', () => {
+    const guess = { about: 'rotation', part: 'waveforms', name: 'A', field: '/waveforms/A/polarisation', standing: 'assumed', value: 'plus-minus-i-cross', agrees: false, proposed: 'the other sense', changes: null, reason: 'It turns by 0.2 rad a sample.', confidence: 0.95, convention: null } as const;
+    expect(printResult({ ...result, guesses: [guess] })).toContain('\n  /waveforms/A/polarisation (assumed: plus-minus-i-cross): the other sense, confidence 0.95. It turns by 0.2 rad a sample.\n');
+    expect(printResult({ ...result, guesses: [{ ...guess, agrees: true }] })).toBe(printResult(result));
+  });
+
   it('shows claimed and recomputed side by side, with uncertainty, tolerance, verdict, and what to do next', () => {
     expect(printResult(result)).toBe(`Spin is visible  (engine 1.0.0)
 
