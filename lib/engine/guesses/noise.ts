@@ -66,6 +66,13 @@ function inFive(points: readonly Point[]): OctaveMedian[] {
   });
 }
 
+function spell(five: readonly OctaveMedian[], turn: number): string {
+  const ratios = five.map(({ ln }) => `×${short(Math.exp(ln))}`);
+  const from = five.map(({ fromHz }) => short(fromHz / turn));
+  const alike = ratios.length > 1 && ratios.every((ratio) => ratio === ratios[0]);
+  return alike ? `${ratios[0]} in each of the octaves from ${from.slice(0, -1).join(', ')} and ${from.at(-1)} Hz` : ratios.map((ratio, i) => `${ratio} from ${from[i]} Hz`).join(', ');
+}
+
 function fitTo(column: NoiseColumn, meaning: NoiseMeaning, known: BuiltInCurve, named: boolean, angular: boolean): CurveFit | null {
   const turn = angular ? 2 * Math.PI : 1;
   const points = pointsAgainst(readAs(column, meaning), known, (x) => x / turn);
@@ -75,8 +82,7 @@ function fitTo(column: NoiseColumn, meaning: NoiseMeaning, known: BuiltInCurve, 
   const [power, off] = ([1, 2, 0.5] as const)
     .map((factor) => [factor, Math.min(...[1, angular ? 1 / turn : 1].map((per) => Math.max(...five.map(({ ln }) => Math.abs(ln - Math.log(factor * per) / 2)))))] as const)
     .reduce((p, q) => (q[1] < p[1] ? q : p));
-  const inOctaves = five.map(({ fromHz, ln }) => `×${short(Math.exp(ln))} from ${short(fromHz / turn)} Hz`).join(', ');
-  return off <= NEAR ? { known, named, meaning, power, angular, off, inOctaves } : null;
+  return off <= NEAR ? { known, named, meaning, power, angular, off, inOctaves: spell(five, turn) } : null;
 }
 
 /**

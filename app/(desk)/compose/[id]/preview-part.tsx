@@ -43,7 +43,7 @@ export function PreviewPart({ id, form, files, given, onGiven }: PreviewPartProp
   return (
     <div className="grid gap-3">
       <p className="max-w-measure text-ui text-ink-2">This browser computes route A of each claim as it stands in the form, in seconds and without sending anything. It says nothing of the uncertainty; the check does.</p>
-      {away.length > 0 && <p className="text-ui">Not in this browser: {away.map(({ name }) => name).join(', ')}. A look needs {away.length === 1 ? 'it' : 'them'} here; nothing is fetched unless you say so.</p>}
+      {away.length > 0 && <p className="text-ui">Not in this browser: {away.map(({ name }) => name).join(', ')}. A look needs {away.length === 1 ? 'it' : 'them'} here, and so does what the data say of {away.length === 1 ? 'its' : 'their'} declaration before a check; nothing is fetched unless you say so.</p>}
       <div className="flex flex-wrap gap-2">
         <Button tone={away.length === 0 ? 'main' : 'plain'} aria-disabled={away.length > 0 || undefined} busy={state.kind === 'running' ? 'Looking' : null} onClick={() => { if (away.length === 0) look(); }}>Look now</Button>
         {away.length > 0 && <Button tone="main" busy={fetching ? 'Fetching' : null} onClick={() => void fetchAway()}>Fetch {away.length === 1 ? 'the file' : `${away.length} files`}, {megabytes < 0.1 ? 'less than 0.1' : megabytes.toFixed(1)} MB</Button>}

@@ -41,7 +41,7 @@ describe('guesses from a noise column beside the built-in curves', () => {
     const found = guessNoise(printed({ holds, declared }));
     expect(against(found)).toEqual([`noise-column: ${holds}`]);
     expect(found[0]).toMatchObject({ convention: 'C01', confidence: 0.95, value: holds });
-    expect(found[0]!.reason).toMatch(/G2 .*×1 from 10 Hz.*×1 from 4/);
+    expect(found[0]!.reason).toMatch(/G2 .*×1 in each of the octaves from 10, 40, 160, 640 and 2560 Hz/);
   });
 
   it('tell half and twice the power, and what of it a sheet can say', () => {
