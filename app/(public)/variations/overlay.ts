@@ -55,7 +55,7 @@ export function pointOnSweep(official: readonly Figure[], [only, ...others]: rea
 export function overlayFigures(official: readonly Figure[], varied: readonly Figure[]): readonly Figure[] {
   const left = [...varied];
   const both = official.map((figure) => {
-    const i = left.findIndex((other) => other.kind === figure.kind && other.x.label === figure.x.label && other.x.unit === figure.x.unit && atOnePlace(figure, other));
+    const i = left.findIndex((other) => !figure.plane && other.kind === figure.kind && other.x.label === figure.x.label && other.x.unit === figure.x.unit && atOnePlace(figure, other));
     const [other] = i < 0 ? [] : left.splice(i, 1);
     return other ? overlaid(figure, other) : figure;
   });

@@ -40,7 +40,7 @@ export function panelsOf(figure: Figure): readonly Panel[] {
 
 /** The claimed values of a sweep are points, and all of them over words, between which nothing lies; claimed traces of waveforms are lines. */
 export const drawnAsPoints = (figure: Figure, series: FigureSeries): boolean =>
-  figure.kind === 'sweep' && (figure.x.words !== undefined || series.role === 'claimed' || (series.role === 'varied' && isLonely(series)));
+  series.points === true || (figure.kind === 'sweep' && (figure.x.words !== undefined || series.role === 'claimed' || (series.role === 'varied' && isLonely(series))));
 
 /** Where both are points, the recomputed one is full: told apart without colour. */
 export const drawnFull = (series: FigureSeries): boolean => series.role === 'recomputed';

@@ -31,10 +31,12 @@ async function save(as: SavedAs, figure: Figure, origin: FigureOrigin, range: Ra
   }
 }
 
-function Saves({ figure, range, origin }: { readonly figure: Figure; readonly range: Range | null; readonly origin: FigureOrigin }) {
-  return (
+/** The ways to take a figure home; none where no claim owns it. */
+export function Saves({ figure, range }: { readonly figure: Figure; readonly range: Range | null }) {
+  const origin = useFigureOrigin();
+  return origin && (
     <span role="group" aria-label={`Save “${figure.title}”`} className="flex flex-wrap items-center">
-      <span className="mr-1 text-ink-2">{formatNumber(figure.x.values.length)} points. Save:</span>
+      <span className="mr-1 text-ink-2">{formatNumber(figure.plane?.level.values.length ?? figure.x.values.length)} points. Save:</span>
       {formats.map(({ as, word, says }) => (
         <Button key={as} tone="quiet" size="low" aria-label={`Save ${says}: ${figure.title}`} onClick={() => void save(as, figure, origin, range)}>{word}</Button>
       ))}
@@ -46,7 +48,6 @@ const brief = (value: number): string => formatNumber(Number(value.toPrecision(4
 
 /** Beneath a plot: nearer, farther, whole, and the ways to take it home. */
 export function PlotTools({ figure, range, onZoom, onReset }: PlotToolsProps) {
-  const origin = useFigureOrigin();
   const part = range ? `${brief(range[0])} to ${brief(range[1])} ${unitText(figure.x.unit)}`.trim() : 'whole axis';
   return (
     <div className="-mx-2 flex flex-wrap items-center justify-between gap-x-3">
@@ -56,7 +57,7 @@ export function PlotTools({ figure, range, onZoom, onReset }: PlotToolsProps) {
         <Button tone="quiet" size="low" aria-label={`Reset the view of ${figure.title}`} aria-disabled={range === null} onClick={() => { if (range) onReset(); }}>Reset</Button>
         <output className="ml-1 text-ink-2">{part}</output>
       </span>
-      {origin && <Saves figure={figure} range={range} origin={origin} />}
+      <Saves figure={figure} range={range} />
     </div>
   );
 }

@@ -38,13 +38,22 @@ export interface MeasuredPoint {
 
 /** A curve to draw: plain numbers with units, thinned for the screen, never used for a verdict. */
 export interface Figure {
-  readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux' | 'curve';
+  readonly kind: 'waveforms' | 'integrand' | 'sweep' | 'flux' | 'curve' | 'plane';
   readonly title: string;
   /** The point that is drawn, of a sweep; absent where the figure is of all points. */
   readonly at?: Place;
   /** Where the axis goes over words, they stand at the places 0, 1, 2, … and nothing lies between them. */
   readonly x: { readonly label: string; readonly unit: string; readonly scale: 'linear' | 'log'; readonly values: readonly number[]; readonly words?: readonly string[] };
   readonly series: readonly FigureSeries[];
+  /** Of a map: its second axis and the level over both; the series are places on it. */
+  readonly plane?: FigurePlane;
+}
+/** Levels over the horizontal axis and a second one, row by row from the lowest. */
+export interface FigurePlane {
+  readonly y: { readonly label: string; readonly unit: string; readonly values: readonly number[] };
+  readonly level: { readonly label: string; readonly unit: string; readonly values: readonly (number | null)[] };
+  /** Drawn as a contour. */
+  readonly threshold: number;
 }
 export interface FigureSeries {
   readonly label: string;
@@ -54,6 +63,8 @@ export interface FigureSeries {
   readonly axis: 'left' | 'right';
   readonly scale: 'linear' | 'log';
   readonly values: readonly (number | null)[];
+  /** Values that stand alone: nothing joins them. */
+  readonly points?: true;
 }
 
 /** A setting with the value that was used and how it came to be. */

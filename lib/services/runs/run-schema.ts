@@ -18,7 +18,8 @@ export const runSchema = z
   .meta({ id: 'Run' });
 
 const axis = z.object({ label: z.string(), unit: z.string(), scale: z.enum(['linear', 'log']), values: z.array(z.number()), words: z.array(z.string()).optional() });
-const series = z.object({ label: z.string(), unit: z.string(), role: z.string(), axis: z.enum(['left', 'right']), scale: z.enum(['linear', 'log']), values: z.array(z.number().nullable()) });
-const figure = z.looseObject({ kind: z.string(), title: z.string(), at: z.record(z.string(), z.union([z.number(), z.string()])).optional(), x: axis, series: z.array(series) });
+const series = z.object({ label: z.string(), unit: z.string(), role: z.string(), axis: z.enum(['left', 'right']), scale: z.enum(['linear', 'log']), values: z.array(z.number().nullable()), points: z.literal(true).optional() });
+const plane = z.object({ y: z.object({ label: z.string(), unit: z.string(), values: z.array(z.number()) }), level: z.object({ label: z.string(), unit: z.string(), values: z.array(z.number().nullable()) }), threshold: z.number() });
+const figure = z.looseObject({ kind: z.string(), title: z.string(), at: z.record(z.string(), z.union([z.number(), z.string()])).optional(), x: axis, series: z.array(series), plane: plane.optional() });
 
 export const figuresSchema = z.object({ runId: z.string(), figures: z.record(z.string(), z.array(figure)) }).meta({ id: 'Figures' });

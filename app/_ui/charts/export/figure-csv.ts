@@ -10,9 +10,10 @@ const comment = (words: string): string => `# ${words.replace(/\s+/g, ' ')}`;
  * Lines with # before the header say what it is; no cell can be taken for a formula by a spreadsheet.
  */
 export function figureCsv(figure: Figure, origin: FigureOrigin): string {
-  const header = [xLabel(figure), ...figure.series.map((s) => withUnit(s.label, s.unit))];
-  const rows = figure.x.values.map((x, i) => [figure.x.words?.[i] ?? x, ...figure.series.map((s) => s.values[i] ?? null)]);
-  const count = figure.x.values.length;
+  const { plane } = figure;
+  const header = plane ? [xLabel(figure), withUnit(plane.y.label, plane.y.unit), withUnit(plane.level.label, plane.level.unit)] : [xLabel(figure), ...figure.series.map((s) => withUnit(s.label, s.unit))];
+  const rows = plane ? plane.y.values.flatMap((y, j) => figure.x.values.map((x, i) => [x, y, plane.level.values[j * figure.x.values.length + i] ?? null])) : figure.x.values.map((x, i) => [figure.x.words?.[i] ?? x, ...figure.series.map((s) => s.values[i] ?? null)]);
+  const count = rows.length;
   const notes = [
     `${titleOf(figure, origin)}; ${origin.source}; claim ${origin.claimId}, ${origin.quantity}, ${pointWords(figure, origin)}`,
     `${count} points, all that the plot draws. They are a thinned copy for the eye: the verdict rests on the files themselves.`,

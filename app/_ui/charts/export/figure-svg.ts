@@ -5,6 +5,7 @@ import { isBand, panelsOf, type Panel } from '../panels';
 import { axisTicks } from './axis-ticks';
 import { pointWords, titleOf, xLabel, yLabel, type FigureOrigin } from './figure-words';
 import { extentOf, type Extent, type Frame } from './frame';
+import { planeSvg } from './plane-svg';
 import { bandPath, barsPath, linePath, pointsOf } from './trace-paths';
 import { traceStyle } from './trace-style';
 import { xmlText } from './xml-text';
@@ -128,8 +129,8 @@ export function figureSvg(request: SvgRequest): { readonly svg: string; readonly
   const { figure, origin } = request;
   const title = titleOf(figure, origin);
   const caption = `${origin.source}; claim ${origin.claimId}, ${origin.quantity}, ${pointWords(figure, origin)}.`;
-  const key = legend(figure, 40);
-  const body = panelsFrom(request, 40 + key.height + 8);
+  const key = figure.plane ? { marks: '', height: 0 } : legend(figure, 40);
+  const body = figure.plane ? planeSvg(figure, figure.plane, LEFT, 48) : panelsFrom(request, 40 + key.height + 8);
   const foot = 40 + key.height + 8 + body.height;
   const lines = brokenLines(caption, 112);
   const height = foot + 16 + lines.length * 16 + 8;
@@ -140,7 +141,7 @@ export function figureSvg(request: SvgRequest): { readonly svg: string; readonly
     text(LEFT, 26, title, 'font-size="16" font-weight="bold"'),
     key.marks,
     body.marks,
-    text(LEFT + (WIDTH - LEFT - RIGHT) / 2, foot - 4, xLabel(figure), 'text-anchor="middle"'),
+    figure.plane ? '' : text(LEFT + (WIDTH - LEFT - RIGHT) / 2, foot - 4, xLabel(figure), 'text-anchor="middle"'),
     ...lines.map((words, i) => text(LEFT, foot + 20 + 16 * i, words, `font-size="11" fill="${light['ink-2']}"`)),
     '</svg>',
   ].join('\n');

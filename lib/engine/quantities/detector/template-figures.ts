@@ -40,11 +40,15 @@ export function massFigure(route: DetectorRoute, point: DetectorPoint, { outcome
   ];
 }
 
-const evenly = (low: number, high: number): number[] => Array.from({ length: SPINS }, (_, i) => (i === SPINS - 1 ? high : low + ((high - low) * i) / (SPINS - 1)));
+const evenly = (low: number, high: number, n = SPINS): number[] => Array.from({ length: n }, (_, i) => (i === n - 1 ? high : low + ((high - low) * i) / (n - 1)));
+
+/** Spins along each side of the plane. */
+const PLANE_SPINS = 61;
+const finite = (x: number): number | null => (Number.isFinite(x) ? x : null);
 
 /**
- * The best match over effective spin with the threshold, and the plane of the two spins with the part that is above it.
- * Shape:  181 spins and the sampled ones; the plane shows the outermost edges.
+ * The best match over effective spin with the threshold, and the same over the plane of the two spins, along whose diagonal the signals lie.
+ * Shape:  181 spins and the sampled ones; the plane has 61 by 61, and the sampled ones.
  * Units:  dimensionless.
  * Error:  for the eye only.
  * Fails:  never.
@@ -66,29 +70,26 @@ export function fractionFigures(at: Figure['at'], found: FractionFound, matchAt:
     x: { label: 'effective spin', ...label, values: x },
     series: [
       line('spline through the best matches', 'recomputed', x.map(matchAt)),
-      line('best match of each signal', 'residual', x.map((s) => sampled.get(s) ?? null)),
+      { ...line('best match of each signal', 'noise', x.map((s) => sampled.get(s) ?? null)), points: true },
       line('threshold', 'claimed', x.map(() => threshold)),
-      line('edges', 'noise', x.map((s) => (edges.includes(s) ? matchAt(s) : null))),
+      ...(edges.length > 0 ? [{ ...line('edges', 'claimed', x.map((s) => (edges.includes(s) ? matchAt(s) : null))), points: true as const }] : []),
     ],
   };
-  const [first, last] = [edges[0], edges[edges.length - 1]];
-  if (first === undefined || last === undefined) return [curve];
   const [m1, m2] = masses;
-  const grid = [...new Set([...evenly(low, high), ...spins])].sort((p, q) => p - q);
-  const edgeLine = (s: number) => grid.map((chi1) => Math.min(high, Math.max(low, (s - m1 * chi1) / m2)));
+  const grid = [...new Set([...evenly(low, high, PLANE_SPINS), ...spins])].sort((p, q) => p - q);
   return [
     curve,
     {
-      kind: 'curve',
-      title: 'Plane of the two spins: between the lines a signal is matched at or above the threshold',
+      kind: 'plane',
+      title: 'Best match over the plane of the two spins, and where it is the threshold',
       ...place,
       x: { label: 'spin of the heavier body', ...label, values: grid },
-      series: [
-        line('lower edge', 'band-low', edgeLine(first)),
-        line('upper edge', 'band-high', edgeLine(last)),
-        line('sampled signals', 'residual', grid.map((s) => (sampled.has(s) ? s : null))),
-      ],
+      series: [{ ...line('sampled signals', 'noise', grid.map((s) => (sampled.has(s) ? s : null))), points: true }],
+      plane: {
+        y: { label: 'spin of the lighter body', unit: '', values: grid },
+        level: { label: 'best match', unit: '', values: grid.flatMap((chi2) => grid.map((chi1) => finite(matchAt(m1 * chi1 + m2 * chi2)))) },
+        threshold,
+      },
     },
   ];
 }
-

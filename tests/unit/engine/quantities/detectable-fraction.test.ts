@@ -39,7 +39,16 @@ describe('a detectable fraction', () => {
   it('takes the signals in any order, and draws the curve and the plane', () => {
     const [there, back] = [measure(family), measure([...family].reverse())];
     expect(back.points[0]!.value).toAgreeWith(there.points[0]!.value!, 1e-12);
-    expect(there.figures.filter(({ kind }) => kind === 'curve').map(({ title }) => title)).toHaveLength(2);
+    const curve = there.figures.find(({ kind }) => kind === 'curve');
+    expect(curve?.series.filter(({ points }) => points).map(({ label, axis }) => [label, axis])).toEqual([['best match of each signal', 'left'], ['edges', 'left']]);
+    const map = there.figures.find(({ kind }) => kind === 'plane');
+    const grid = map?.x.values ?? [];
+    const levelAt = (chi1: number, chi2: number): number => map?.plane?.level.values[grid.indexOf(chi2) * grid.length + grid.indexOf(chi1)] ?? Number.NaN;
+    expect([map?.plane?.y.values, map?.plane?.threshold, map?.plane?.level.values.length]).toEqual([grid, 0.965, grid.length ** 2]);
+    // Equal masses: only the sum of the two spins counts, and along the diagonal stand the signals themselves.
+    expect(levelAt(-0.4, 0.8)).toAgreeWith(levelAt(0.8, -0.4), 1e-12);
+    expect(levelAt(0.8, -0.8)).toAgreeWith(levelAt(0, 0), 1e-12);
+    expect(map?.series[0]?.values.filter((v) => v !== null)).toEqual(spins);
     expect(there.assumed).toEqual(expect.arrayContaining(['threshold', 'weight', 'maximise']));
     expect(there.budget.map(({ id }) => id)).toEqual(expect.arrayContaining(['E01', 'E07', 'interpolation']));
   });
