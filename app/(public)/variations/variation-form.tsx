@@ -6,7 +6,7 @@ import { settingText } from '@/app/(desk)/compose/[id]/claim-fields';
 import { Trouble } from '@/app/(desk)/act-parts';
 import { useAct } from '@/app/(desk)/use-act';
 import { formatAt, formatSetting } from '@/app/_ui/claim/setting-names';
-import { formatNumber } from '@/app/_ui/math/format-number';
+import { readable } from '@/app/_ui/math/format-number';
 import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextareaField } from '@/app/_ui/primitives/control';
@@ -118,7 +118,7 @@ function AtOnceLine({ source, changes }: { readonly source: VariationSource; rea
     <div role="status" className="text-ui">
       {known && (
         <div className="rounded border border-hair-2 bg-sheet px-3 py-2">
-          <p><strong>At once</strong>, by {known.factor === null ? 'a factor at each place' : `the factor ${formatNumber(known.factor, { significant: 6 })}`} on the {source.isDraft ? 'checked' : 'official'} number; nothing was rerun:</p>
+          <p><strong>At once</strong>, by {known.factor === null ? 'a factor at each place' : `the factor ${readable(known.factor, 6)}`} on the {source.isDraft ? 'checked' : 'official'} number; nothing was rerun:</p>
           <ul>{known.points.slice(0, SHOWN_AT_ONCE).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.official, source.points[i]?.expandedUncertainty ?? null, source.unit)} → {formatWithUncertainty(p.value, p.expandedUncertainty, source.unit)}</li>)}</ul>
           {more > 0 && <p className="text-small text-ink-2">and at {more} more {more === 1 ? 'place' : 'places'}</p>}
         </div>
