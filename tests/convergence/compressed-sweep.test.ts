@@ -122,12 +122,27 @@ describe('a measured curve', () => {
     expect(nodeOrder(noiseWeigher(curveWithLines([508]), 0), 20, 2000)).toBeNull();
   });
 
-  it('is summed on fine bins, byte for byte', () => {
+  it('is read from the moments of its rows, and says what bins say', () => {
     const asked: Asked = { pair: [a, b], noise: measured, fLowHz: 20 };
-    const at = [100, 101, 102];
-    const { value, answered } = counted(() => sweep(asked, {}, at));
-    expect(answered).toBe(0);
-    expect(JSON.stringify(value)).toBe(JSON.stringify(sweep(asked, { compress: false }, at)));
+    const { value: swept, answered } = counted(() => sweep(asked));
+    const fine = sweep(asked, { compress: false });
+    expect(answered).toBeGreaterThan(50);
+    expect(furthest(swept, fine, (o) => o.match)).toBeLessThan(1e-12);
+    expect(furthest(swept, fine, (o) => o.mismatch / fine[0]!.mismatch)).toBeLessThan(1e-9);
+    expect(furthest(swept, fine, (o) => o.timeShiftS)).toBeLessThan(1e-8);
+  });
+
+  it('lies nearer to finer bins than bins do', () => {
+    const asked: Asked = { pair: [a, b], noise: measured, fLowHz: 20, halvings: 0 };
+    const [swept, bins, finer] = [sweep(asked), sweep(asked, { compress: false }), sweep(asked, { compress: false, padDoublings: 1 })];
+    expect(furthest(swept.slice(1), finer.slice(1), (o) => o.match)).toBeLessThan(furthest(bins, finer, (o) => o.match) + 1e-13);
+  });
+
+  it('keeps the bins where a short taper leaves the pair rough', () => {
+    const asked: Asked = { pair: [a, b], noise: measured, fLowHz: 20, taperM: 60 };
+    const { value: swept, answered } = counted(() => sweep(asked));
+    expect(answered).toBeGreaterThan(50);
+    expect(furthest(swept, sweep(asked, { compress: false }), (o) => o.match)).toBeLessThan(1e-11);
   });
 });
 
@@ -147,6 +162,16 @@ describe('the certificate of the highest hill', () => {
   const pair = [packets('a', 0, 0.3), packets('b', 260, 0.3)] as const;
   const asked: Asked = { pair, noise: curve('A2'), fLowHz: 20, taperM: 0 };
   const many = Array.from({ length: 145 }, (_, i) => 30 * 1.012 ** i);
+
+  it('holds under a measured curve as well', () => {
+    const lined: Asked = { ...asked, noise: curveWithLines([36.1, 60.3, 180.9]) };
+    const swept = sweep(lined, {}, many);
+    const fine = sweep(lined, { compress: false }, many);
+    const shifts = fine.map((o, i) => o.timeShiftS / (many[i]! * MSUN_S));
+    expect(Math.max(...shifts) - Math.min(...shifts)).toBeGreaterThan(200);
+    expect(furthest(swept, fine, (o) => o.match)).toBeLessThan(1e-11);
+    expect(furthest(swept, fine, (o) => o.timeShiftS)).toBeLessThan(1e-7);
+  });
 
   it('leaves to the bins where a second hill may overtake, and never holds on to a hill that was overtaken', () => {
     const { value: swept, left } = counted(() => sweep(asked, {}, many));

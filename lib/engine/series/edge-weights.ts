@@ -15,6 +15,8 @@ export interface EdgeRule {
    * ∫ from the edge = step × [Σ from the first sample inside + Σ_j weight_j g_j].
    */
   readonly weightsAt: (delta: number, out: Float64Array) => void;
+  /** The same as polynomials in −delta: powers 0 … order of each sample's weight, sample after sample. */
+  readonly powers: Float64Array;
 }
 
 /** Monomial coefficients of the cardinal polynomials on the nodes offset, offset + 1, … */
@@ -46,7 +48,11 @@ function buildRule(order: number, offset: number): EdgeRule {
     for (let i = order - 1; i >= 0; i--) for (let j = 0; j < order; j++) out[j] = (out[j]! + rising[order * i + j]!) * -delta;
     for (let j = 0; j < order; j++) out[j]! += constant[j]!;
   };
-  return { order, offset, weightsAt };
+  const powers = Float64Array.from({ length: order * (order + 1) }, (_, k) => {
+    const [j, i] = [Math.floor(k / (order + 1)), k % (order + 1)];
+    return i === 0 ? constant[j]! : rising[order * (i - 1) + j]!;
+  });
+  return { order, offset, weightsAt, powers };
 }
 
 const rules = new Map<number, EdgeRule>();

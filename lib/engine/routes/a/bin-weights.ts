@@ -1,4 +1,5 @@
 import { edgeRule } from '@/lib/engine/series/edge-weights';
+import { addKinks } from './kink-weights';
 import type { NoiseWeigher } from './noise-weigher';
 
 /** ∫ from f_l to f_h of g(f)/S(f) df = dfHz × Σ_i values[i] · g at bin first + i. */
@@ -34,10 +35,6 @@ function logBins(upTo: number): Float64Array {
   }
   return logTable;
 }
-
-const MOST_KINK_ORDER = 8;
-/** A kink whose end weights would move the sum by less than this fraction of one bin is left to the plain sum. */
-const LEAST_KINK = 1e-16;
 
 interface Builder {
   readonly range: BinRange;
@@ -91,33 +88,6 @@ function addEdge(b: Builder, fHz: number, direction: 1 | -1, order: number, weig
 
 const clamp = (x: number, low: number, high: number): number => Math.max(low, Math.min(high, x));
 
-/** Steep lines on coarse bins are continued over fewer of them: a power law of hundreds is no polynomial over eight bins. */
-function kinkOrder(change: number, order: number): number {
-  if (change * 4 < 2) return Math.min(order, MOST_KINK_ORDER);
-  return change * 2 < 2 ? 4 : 2;
-}
-
-function addKinks(b: Builder): void {
-  const { range, weigher, first, last, values } = b;
-  if (values === null) return;
-  const { kinksHz } = weigher;
-  const offsetLog = Math.log(range.dfHz);
-  const logs = logBins(last);
-  for (let i = weigher.firstKinkAbove(range.fLowHz); i < kinksHz.length && kinksHz[i]! < range.fHighHz; i++) {
-    const f = kinksHz[i]!;
-    if (f <= range.fLowHz) continue;
-    const step = range.dfHz / f;
-    const change = weigher.steepnessAt(i) * step;
-    if (change * step < LEAST_KINK) continue;
-    const most = Math.min(kinkOrder(change, range.order), last - first + 1);
-    const place = f / range.dfHz;
-    const inside = Math.ceil(place);
-    const offset = clamp(-(most >> 1), first - inside, last - inside - most + 1);
-    edgeRule(most, offset).weightsAt(inside - place, b.share);
-    for (let bin = inside + offset, j = 0; j < most; bin++, j++) values[bin - first]! += b.share[j]! * weigher.jumpAt(i, logs[bin]! + offsetLog);
-  }
-}
-
 /**
  * Weights that turn a plain sum over bins into the integral of g/S between exact band edges.
  * Shape:  a run of bins that covers the band and the stencils just outside it; empty when the band holds nothing. Zeros may be lent for it.
@@ -135,7 +105,7 @@ export function binWeights(weigher: NoiseWeigher, range: BinRange, lend: (n: num
   const b = builderOf(weigher, range, frame, values);
   if (inHigh >= inLow) weigher.fill(values.subarray(inLow - first, inHigh - first + 1), logBins(last), inLow, inHigh, Math.log(dfHz));
   addEdges(b);
-  addKinks(b);
+  addKinks(values, weigher, range, first, last);
   return { first, values, dfHz, doubt: b.doubt };
 }
 

@@ -15,12 +15,20 @@ export interface NodeRun {
   readonly columns: FourColumns;
 }
 
-export interface Block {
-  readonly first: number;
-  readonly size: number;
+/** Nodes that turn together: their places about a middle, and how far the next block's middle lies from it, in bins. */
+export interface TurnBlock {
+  readonly middle: number;
+  readonly width: number;
+  /** One array for all blocks whose nodes lie alike. */
+  readonly offsets: Float64Array;
   /** Its place in the nodes of all blocks. */
   readonly offset: number;
   readonly nodes: number;
+}
+
+export interface Block extends TurnBlock {
+  readonly first: number;
+  readonly size: number;
 }
 
 function gatherNodes(order: number, from: number, size: number, { first, columns }: BinColumns, at: number, into: NodeRun): void {
@@ -85,7 +93,7 @@ export class CompressedBins {
     for (let first = from - (from % blockSize(from)); first <= to; first += blockSize(first)) {
       const size = blockSize(first);
       const own = size < LEAST_BLOCK ? size : order;
-      blocks.push({ first, size, offset: nodes, nodes: own });
+      blocks.push({ first, size, middle: first + (size - 1) / 2, width: size, offsets: nodeOffsets(size, order), offset: nodes, nodes: own });
       nodes += own;
     }
     this.blocks = blocks;

@@ -2,22 +2,21 @@ import type { Response } from '@/lib/engine/contract/settings';
 import { transformOfSize } from '@/lib/engine/fourier/transform';
 import { binWeights, type BinRange } from './bin-weights';
 import type { Standing } from './aligned-columns';
-import type { CompressedBins } from './compressed-bins';
 import { crossSpectrum, type CrossSpectrum } from './cross-spectrum';
 import { evaluateAt } from './lag-search';
-import { nodeBand, nodeSum, type NodeBand } from './node-band';
+import { nodeSum, type NodeBand } from './node-band';
 import { BB, DD, NodeLag, RE } from './node-lag';
 import type { NoiseWeigher } from './noise-weigher';
 import type { Spectrum } from './spectrum';
+import type { SweepGround } from './sweep-ground';
 
 /** All lags at one mass, from every bin, and what the certificate asks of it. */
-export interface LagAnchor {
+export interface LagAnchor<Mark = unknown> {
   /** Places of the grid of lags where |ẑ| (1 for equal signals) is high, and how high; nowhere else is it above `rest`. */
   readonly heights: ReadonlyMap<number, number>;
   readonly rest: number;
-  /** 1/S at the nodes over ‖a‖‖b‖ of the spectra as they are. */
-  readonly weight: Float64Array;
-  readonly band: Pick<NodeBand, 'from' | 'to' | 'touchedFrom' | 'touchedTo'>;
+  /** What the bound of the masses between asks for. */
+  readonly mark: Mark;
   /** Square of how far, in bins, the band's power lies from its middle. */
   readonly spread: number;
 }
@@ -26,7 +25,7 @@ export interface AnchorRequest {
   readonly a: Spectrum;
   readonly b: Spectrum;
   readonly response: Exclude<Response, 'complex'>;
-  readonly bins: CompressedBins;
+  readonly ground: SweepGround;
   readonly standing: Standing;
   readonly weigher: NoiseWeigher;
   readonly range: BinRange;
@@ -40,9 +39,6 @@ export interface LagGrid {
   /** Every so-manieth bin alone still tells all lags apart. */
   readonly stride: number;
 }
-
-/** Of ‖a‖‖b‖, by how much sums over nodes may differ from those over bins. */
-const AGREED = 1e-13;
 
 interface Scratch {
   readonly data: Float64Array;
@@ -87,18 +83,19 @@ function heightsOf(c: CrossSpectrum, { size, stride }: LagGrid, norm: number): P
 }
 
 /** ‖a‖² of an aligned pair over a band, and ‖b‖². */
-export const nodeNorms = (bins: CompressedBins, band: NodeBand): readonly [normA: number, normB: number, gap: number] => {
-  const gap = nodeSum(bins, band, DD) + 2 * nodeSum(bins, band, RE);
-  const normB = nodeSum(bins, band, BB);
+export const nodeNorms = (band: NodeBand): readonly [normA: number, normB: number, gap: number] => {
+  const gap = nodeSum(band, DD) + 2 * nodeSum(band, RE);
+  const normB = nodeSum(band, BB);
   return [normB + gap, normB, gap];
 };
 
 /** Variance of the place of the band's power, in bins², of both sides taken together. */
-function spreadOf(bins: CompressedBins, band: NodeBand): number {
-  const { bin, columns } = bins.run;
+function spreadOf(band: NodeBand): number {
+  const { blocks, run } = band.nodes;
+  const { bin, columns } = run;
   let [n, sum, square] = [0, 0, 0];
   for (let b = band.from; b <= band.to; b++) {
-    const block = bins.blocks[b]!;
+    const block = blocks[b]!;
     for (let i = block.offset; i < block.offset + block.nodes; i++) {
       const p = band.weight[i]! * (columns[DD]![i]! + 2 * columns[RE]![i]! + 2 * columns[BB]![i]!);
       n += p;
@@ -109,14 +106,15 @@ function spreadOf(bins: CompressedBins, band: NodeBand): number {
   return n > 0 ? square / n - (sum / n) ** 2 : Infinity;
 }
 
-function agrees(c: CrossSpectrum, band: NodeBand, norms: readonly [number, number, number], { bins, standing, delta }: AnchorRequest): boolean {
+function agrees(c: CrossSpectrum, band: NodeBand, norms: readonly [number, number, number], { ground, range, standing, delta }: AnchorRequest): boolean {
   const [sa, sb] = standing.scales;
-  const near = (x: number, y: number): boolean => Math.abs(x / y - 1) < AGREED;
+  const agreed = ground.agreement(range);
+  const near = (x: number, y: number): boolean => Math.abs(x / y - 1) < agreed;
   if (!near(norms[0], c.normA * sa * sa) || !near(norms[1], c.normB * sb * sb)) return false;
-  const [fine, node] = [evaluateAt(c, standing.x + delta), new NodeLag(bins, band).at(delta)];
+  const [fine, node] = [evaluateAt(c, standing.x + delta), new NodeLag(band).at(delta)];
   const [cos, sin] = [Math.cos(standing.turnRad) * sa * sb, Math.sin(standing.turnRad) * sa * sb];
   const far = Math.hypot(fine.re * cos + fine.im * sin - node.re, fine.im * cos - fine.re * sin - node.im);
-  return far < AGREED * Math.sqrt(norms[0] * norms[1]);
+  return far < agreed * Math.sqrt(norms[0] * norms[1]);
 }
 
 /**
@@ -128,14 +126,12 @@ function agrees(c: CrossSpectrum, band: NodeBand, norms: readonly [number, numbe
  * Source: engine design: choose by comparing both at the anchors.
  */
 export function lagAnchor(request: AnchorRequest): LagAnchor | null {
-  const { a, b, response, bins, weigher, range, grid } = request;
-  const band = nodeBand(bins, weigher, range);
+  const { a, b, response, ground, weigher, range, grid } = request;
+  const band = ground.weigh(range);
   if (band === null) return null;
-  const norms = nodeNorms(bins, band);
+  const norms = nodeNorms(band);
   const c = crossSpectrum(a, b, response, binWeights(weigher, range, lend));
   if (!(norms[0] > 0 && norms[1] > 0) || !agrees(c, band, norms, request)) return null;
-  const norm = Math.sqrt(norms[0] * norms[1]);
-  const [sa, sb] = request.standing.scales;
-  const { from, to, touchedFrom, touchedTo } = band;
-  return { ...heightsOf(c, grid, Math.sqrt(c.normA * c.normB)), weight: band.weight.slice(0, bins.run.bin.length).map((w) => (w * sa * sb) / norm), band: { from, to, touchedFrom, touchedTo }, spread: spreadOf(bins, band) };
+  const norm = Math.sqrt(c.normA * c.normB);
+  return { ...heightsOf(c, grid, norm), mark: ground.mark(band, range, norm), spread: spreadOf(band) };
 }

@@ -1,5 +1,5 @@
 import { bandEdges, type BinRange, type BandEdges } from './bin-weights';
-import type { CompressedBins, FourColumns, NodeRun } from './compressed-bins';
+import type { CompressedBins, FourColumns, NodeRun, TurnBlock } from './compressed-bins';
 import type { NoiseWeigher } from './noise-weigher';
 
 /** Places that are no whole block: parts of the blocks that an edge cuts, and the bins of the edges' own weights. */
@@ -10,16 +10,27 @@ export interface LooseNodes {
   readonly columns: FourColumns;
 }
 
-/** A band at one mass on compressed bins: 1/S at the nodes of its blocks, and what lies between them and its edges. */
+/** Blocks of nodes with what is read at them. */
+export interface NodeBlocks {
+  readonly blocks: readonly TurnBlock[];
+  readonly run: Pick<NodeRun, 'bin' | 'columns'>;
+}
+
+/** A band at one mass as a sum over nodes: blocks `from` … `to`, and single places. */
 export interface NodeBand {
-  /** Blocks wholly inside, and those touched: `from` … `to` within `touchedFrom` … `touchedTo`. */
+  readonly nodes: NodeBlocks;
   readonly from: number;
   readonly to: number;
-  readonly touchedFrom: number;
-  readonly touchedTo: number;
-  /** 1/S at the nodes of touched blocks, by place in the run of all; of a cut block's nodes outside the band, 1/S at the edge. */
+  /** What each node counts, by place in the run of all. */
   readonly weight: Float64Array;
   readonly loose: LooseNodes;
+}
+
+/** The same on compressed bins: 1/S at the nodes of its blocks, and what lies between them and its edges. */
+export interface CutBand extends NodeBand {
+  /** Blocks touched, around those wholly inside; of a cut block's nodes outside the band, the weight is 1/S at the edge. */
+  readonly touchedFrom: number;
+  readonly touchedTo: number;
   readonly edges: BandEdges;
 }
 
@@ -87,7 +98,7 @@ function cutParts(bins: CompressedBins, inLow: number, inHigh: number): { runs: 
  * Fails:  never.
  * Source: engine design (compressed nodes).
  */
-export function nodeBand(bins: CompressedBins, weigher: NoiseWeigher, range: BinRange): NodeBand | null {
+export function nodeBand(bins: CompressedBins, weigher: NoiseWeigher, range: BinRange): CutBand | null {
   const edges = bandEdges(weigher, range);
   const [firstBin, lastBin] = bins.ends;
   if (edges === null || edges.inLow < firstBin || edges.inHigh > lastBin || edges.inHigh < edges.inLow) return null;
@@ -106,17 +117,18 @@ export function nodeBand(bins: CompressedBins, weigher: NoiseWeigher, range: Bin
   };
   for (let i = low.offset; i < end && bin[i]! < inLow; i++) atEdge(i, Math.max(range.fLowHz, Math.exp(logBin[i]! + offset)));
   for (let i = end - 1; i >= low.offset && bin[i]! > inHigh; i--) atEdge(i, Math.min(range.fHighHz, Math.exp(logBin[i]! + offset)));
-  return { from, to, touchedFrom, touchedTo, weight, loose: looseNodes(runs, edges, bins, weigher, offset), edges };
+  return { nodes: bins, from, to, touchedFrom, touchedTo, weight, loose: looseNodes(runs, edges, bins, weigher, offset), edges };
 }
 
 /** Σ of 1/S times a column over the band. */
-export function nodeSum(bins: CompressedBins, band: NodeBand, column: number): number {
-  const values = bins.run.columns[column]!;
-  const { weight, loose } = band;
+export function nodeSum(band: NodeBand, column: number): number {
+  const { weight, loose, nodes } = band;
+  const { blocks, run } = nodes;
+  const values = run.columns[column]!;
   let sum = 0;
   if (band.to >= band.from) {
-    const last = bins.blocks[band.to]!;
-    for (let i = bins.blocks[band.from]!.offset; i < last.offset + last.nodes; i++) sum += weight[i]! * values[i]!;
+    const last = blocks[band.to]!;
+    for (let i = blocks[band.from]!.offset; i < last.offset + last.nodes; i++) sum += weight[i]! * values[i]!;
   }
   const own = loose.columns[column]!;
   for (let i = 0; i < loose.n; i++) sum += loose.weight[i]! * own[i]!;

@@ -1,7 +1,6 @@
-import { nodeOffsets } from './chebyshev-blocks';
-import type { CompressedBins } from './compressed-bins';
 import type { LagSums } from './lag-sums';
 import type { NodeBand } from './node-band';
+import { NodeHeights } from './node-heights';
 
 const TURN = 2 * Math.PI;
 const MOST_NODES = 16;
@@ -20,15 +19,13 @@ const sin = new Float64Array(MOST_NODES);
 
 /** The product of an aligned pair over a band at one mass, as a function of a further shift of b; good until the next is made. */
 export class NodeLag {
-  constructor(
-    private readonly bins: CompressedBins,
-    private readonly band: NodeBand,
-  ) {
-    const { columns } = bins.run;
-    const { weight, loose } = band;
+  constructor(private readonly band: NodeBand) {
+    const { weight, loose, nodes } = band;
+    const { blocks, run } = nodes;
+    const { columns } = run;
     const [er, ei, bb] = [columns[RE], columns[IM], columns[BB]];
-    const start = band.to >= band.from ? bins.blocks[band.from]!.offset : 0;
-    const end = band.to >= band.from ? bins.blocks[band.to]!.offset + bins.blocks[band.to]!.nodes : 0;
+    const start = band.to >= band.from ? blocks[band.from]!.offset : 0;
+    const end = band.to >= band.from ? blocks[band.to]!.offset + blocks[band.to]!.nodes : 0;
     if (wr.length < Math.max(end, loose.n)) [wr, wi, lr, li] = [0, 0, 0, 0].map(() => new Float64Array(2 * Math.max(end, loose.n))) as [F, F, F, F];
     for (let i = start; i < end; i++) {
       wr[i] = weight[i]! * (er[i]! + bb[i]!);
@@ -53,10 +50,10 @@ export class NodeLag {
 
   at(delta: number): LagSums {
     const sums = { re: 0, im: 0, re1: 0, im1: 0, re2: 0, im2: 0 };
-    const { blocks } = this.bins;
+    const { blocks } = this.band.nodes;
     for (let b = this.band.from; b <= this.band.to;) {
       let end = b;
-      while (end < this.band.to && blocks[end + 1]!.size === blocks[b]!.size) end++;
+      while (end < this.band.to && blocks[end + 1]!.offsets === blocks[b]!.offsets) end++;
       this.addOctave(sums, b, end, delta);
       b = end + 1;
     }
@@ -64,49 +61,20 @@ export class NodeLag {
     return sums;
   }
 
-  /** |Σ q e^{2πikδ}| alone, by half the work. */
-  heightAt(delta: number): number {
-    const { blocks, order } = this.bins;
-    const [xs, ys, cosines, sines] = [wr, wi, cos, sin];
-    const { n, bin } = this.band.loose;
-    let re = 0;
-    let im = 0;
-    let size = 0;
-    for (let b = this.band.from; b <= this.band.to; b++) {
-      const block = blocks[b]!;
-      if (block.size !== size) this.turnNodes(nodeOffsets((size = block.size), order), delta);
-      let x = 0;
-      let y = 0;
-      for (let j = 0; j < block.nodes; j++) {
-        const p = xs[block.offset + j]!;
-        const q = ys[block.offset + j]!;
-        x += p * cosines[j]! - q * sines[j]!;
-        y += p * sines[j]! + q * cosines[j]!;
-      }
-      const angle = TURN * (block.first + (size - 1) / 2) * delta;
-      const c = Math.cos(angle);
-      const s = Math.sin(angle);
-      re += c * x - s * y;
-      im += c * y + s * x;
-    }
-    for (let i = 0; i < n; i++) {
-      const c = Math.cos(TURN * bin[i]! * delta);
-      const s = Math.sin(TURN * bin[i]! * delta);
-      re += lr[i]! * c - li[i]! * s;
-      im += lr[i]! * s + li[i]! * c;
-    }
-    return Math.hypot(re, im);
+  /** Heights alone, at shifts of up to `sight`. */
+  heights(sight: number): NodeHeights {
+    const { nodes, from, to, loose } = this.band;
+    return new NodeHeights({ blocks: nodes.blocks.slice(from, to + 1), re: wr, im: wi, loose: { n: loose.n, bin: loose.bin, re: lr, im: li } }, sight);
   }
 
-  /** Blocks of one size: their nodes turn alike about their middles, and the middles by even steps. */
+  /** Blocks of one width: their nodes turn alike about their middles, and the middles by even steps. */
   private addOctave(sums: LagSums, from: number, to: number, delta: number): void {
-    const { blocks, order } = this.bins;
+    const { blocks } = this.band.nodes;
     const [xs, ys, cosines, sines] = [wr, wi, cos, sin];
-    const { size, first, nodes } = blocks[from]!;
-    const offsets = nodeOffsets(size, order);
+    const { width, offsets, nodes } = blocks[from]!;
     this.turnNodes(offsets, delta);
-    const [stepC, stepS] = [Math.cos(TURN * size * delta), Math.sin(TURN * size * delta)];
-    let middle = first + (size - 1) / 2;
+    const [stepC, stepS] = [Math.cos(TURN * width * delta), Math.sin(TURN * width * delta)];
+    let middle = blocks[from]!.middle;
     let c = Math.cos(TURN * middle * delta);
     let s = Math.sin(TURN * middle * delta);
     for (let b = from; b <= to; b++) {
@@ -144,7 +112,7 @@ export class NodeLag {
       const next = c * stepC - s * stepS;
       s = c * stepS + s * stepC;
       c = next;
-      middle += size;
+      middle += width;
     }
   }
 

@@ -16,8 +16,8 @@ export interface NoiseWeigher {
   readonly fill: (out: Float64Array, logF: Float64Array, first: number, last: number, offset: number) => void;
   /** |d ln S/d ln f| beside a kink, the larger. */
   readonly steepnessAt: (index: number) => number;
-  /** What 1/S gains at ln f where the law above a kink stands in for the one below it. */
-  readonly jumpAt: (index: number, logF: number) => number;
+  /** What 1/S gains where the law above a kink stands in for the one below it: powers 1 … JUMP_TERMS of f/f_kink − 1, kink after kink. */
+  readonly jumps: Float64Array;
   /** 1/S at ln f by the formula that holds just above (side +1) or below (side −1) kink `index`, continued. */
   readonly continuedAt: (index: number, side: 1 | -1, logF: number) => number;
   /** Index of the first kink above f; the formula at f is the one below that kink. */
@@ -163,7 +163,7 @@ function closedFormWeigher(curve: NoiseCurve, halvings: number): NoiseWeigher {
     kinkResolutionHz: () => Infinity,
     fill,
     steepnessAt: () => 0,
-    jumpAt: () => 0,
+    jumps: new Float64Array(0),
     continuedAt: (_index, _side, logF) => readTable(table, logF),
     firstKinkAbove: () => 0,
   };
@@ -189,19 +189,17 @@ function expNearZero(z: number): number {
   return 1 + z * (1 + z * (1 / 2 + z * (1 / 6 + z * (1 / 24 + z * (1 / 120 + z * (1 / 720 + z * (1 / 5040 + z / 40320)))))));
 }
 
-/** Terms of the series of a jump, and how far they reach: the next would be 1e-14 of 1/S. */
-const SERIES = 6;
-const SERIES_REACH = 0.03;
+export const JUMP_TERMS = 10;
 
-/** 1/S above each kink less 1/S below it, in powers of ln f from the kink. */
+/** 1/S above each kink less 1/S below it: the binomial series of both power laws. */
 function jumpSeries(inverse: Float64Array, slope: Float64Array): Float64Array {
-  const made = new Float64Array(SERIES * (slope.length - 1));
+  const made = new Float64Array(JUMP_TERMS * (slope.length - 1));
   for (let i = 0; i < slope.length - 1; i++) {
     let [above, below] = [inverse[i + 1]!, inverse[i + 1]!];
-    for (let n = 1; n <= SERIES; n++) {
-      above *= -slope[i + 1]! / n;
-      below *= -slope[i]! / n;
-      made[SERIES * i + n - 1] = above - below;
+    for (let n = 1; n <= JUMP_TERMS; n++) {
+      above *= (-slope[i + 1]! - n + 1) / n;
+      below *= (-slope[i]! - n + 1) / n;
+      made[JUMP_TERMS * i + n - 1] = above - below;
     }
   }
   return made;
@@ -210,7 +208,8 @@ function jumpSeries(inverse: Float64Array, slope: Float64Array): Float64Array {
 function tableWeigher(curve: NoiseCurve, points: Float64Array): NoiseWeigher {
   const segments = points.length - 1;
   const logP = points.map(Math.log);
-  const logS = points.map((f) => Math.log(curve.psd(f)));
+  const values = points.map((f) => curve.psd(f));
+  const logS = values.map(Math.log);
   const slope = Float64Array.from({ length: segments }, (_, i) => (logS[i + 1]! - logS[i]!) / (logP[i + 1]! - logP[i]!));
   const inverse = logS.map((x) => Math.exp(-x));
   const inSegment = (i: number, logF: number): number => inverse[i]! * expNearZero(-slope[i]! * (logF - logP[i]!));
@@ -239,20 +238,13 @@ function tableWeigher(curve: NoiseCurve, points: Float64Array): NoiseWeigher {
   };
   return {
     closedForm: false,
-    ceiling: points.reduce((most, f) => Math.max(most, 1 / curve.psd(f)), 0),
+    ceiling: values.reduce((most, s) => Math.max(most, 1 / s), 0),
     kinksHz,
     steepness: (fLowHz, fHighHz) => Math.max(Math.abs(slope[firstKinkAbove(fLowHz)]!), Math.abs(slope[firstKinkAbove(fHighHz)]!)),
     kinkResolutionHz: (fLowHz, fHighHz, change) => finestKink(kinksHz, slope, fLowHz, fHighHz, change),
     fill,
     steepnessAt: (index) => steep[index]!,
-    jumpAt: (index, logF) => {
-      const y = logF - logP[index + 1]!;
-      if (Math.abs(steep[index]! * y) < SERIES_REACH) {
-        const o = SERIES * index;
-        return y * (jumps[o]! + y * (jumps[o + 1]! + y * (jumps[o + 2]! + y * (jumps[o + 3]! + y * (jumps[o + 4]! + y * jumps[o + 5]!)))));
-      }
-      return inverse[index + 1]! * (expNearZero(-slope[index + 1]! * y) - expNearZero(-slope[index]! * y));
-    },
+    jumps,
     continuedAt: (index, side, logF) => inSegment(side > 0 ? index + 1 : index, logF),
     firstKinkAbove,
   };

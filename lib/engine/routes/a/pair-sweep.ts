@@ -3,19 +3,23 @@ import type { Response } from '@/lib/engine/contract/settings';
 import { powerOfTwoFrom } from '@/lib/engine/fourier/transform';
 import { alignedColumns, standingOf, type Standing } from './aligned-columns';
 import { xOfShift, type Alignment, type Freedom, type Pair } from './alignment';
-import { blockPowers, distanceBound, riseBetween, rivals, type BlockPowers, type Bracket } from './anchor-certificate';
+import { riseBetween, rivals, type Bracket } from './anchor-certificate';
 import { AnchorLattice, type HeldBracket } from './anchor-lattice';
-import { lastLiveBin, powersOf, survey, TOP_PART } from './band-power';
+import { lastLiveBin, survey, TOP_PART } from './band-power';
 import { blockSize } from './chebyshev-blocks';
-import { CompressedBins, type BinColumns, type FourColumns } from './compressed-bins';
+import type { BinColumns, FourColumns } from './compressed-bins';
+import { CompressedGround, FIRST_BIN } from './compressed-ground';
 import { lagAnchor, nodeNorms, type LagAnchor, type LagGrid } from './lag-anchor';
-import { nodeBand, type NodeBand } from './node-band';
+import type { NodeBand } from './node-band';
+import { HEIGHT_ROOM } from './node-heights';
 import { NodeLag } from './node-lag';
-import { MOST_TURN_RAD } from './node-order';
 import { nodeResidual } from './node-residual';
 import type { NoiseWeigher } from './noise-weigher';
+import type { BinRange } from './bin-weights';
 import type { Numerics } from './numerics';
-import { rangeFor, SETTLED } from './prepare';
+import { rangeFor } from './prepare';
+import type { SweepGround } from './sweep-ground';
+import { TableGround } from './table-ground';
 
 /** A match found on bins, from which its neighbours in mass are reached. */
 export interface Found {
@@ -28,11 +32,11 @@ export interface SweepKind {
   readonly response: Exclude<Response, 'complex'>;
   readonly freedom: Freedom;
   readonly weigher: NoiseWeigher;
-  readonly order: number;
+  /** Nodes of a block of bins for a smooth curve; null for a table, whose own moments are taken. */
+  readonly order: number | null;
   readonly numerics: Numerics;
 }
 
-const FIRST_BIN = 16;
 const LEAD = 8;
 const MOST_BINS = 1 << 19;
 /** Power that the end of the nodes may leave out, by what is seen at the first mass. */
@@ -69,8 +73,7 @@ export interface SweptAlignment extends Alignment {
 /** One pair of waveforms at any mass, from nodes; what it cannot vouch for it leaves to the bins. */
 export class PairSweep {
   private standing: Standing;
-  private bins: CompressedBins;
-  private powers: BlockPowers;
+  private ground: SweepGround;
   private readonly lattice = new AnchorLattice((place) => this.anchorAt(place));
   private readonly grid: LagGrid;
   /** Masses (in seconds a unit) and shifts of the last two points. */
@@ -84,12 +87,11 @@ export class PairSweep {
     private readonly last: number,
   ) {
     this.standing = standingOf(found.alignment);
-    this.bins = this.compressed();
-    this.powers = this.bare();
     const stride = found.pair.lagStride;
     this.grid = { stride, size: powerOfTwoFrom((2 * last) / stride) };
     const { pair, alignment } = found;
     this.shares = [pair.a, pair.b].map((s, i) => survey(s, pair.weights).all / alignment.norms[i]!);
+    this.ground = this.broken();
     this.seen.push([found.pair.secondsPerUnit[0]!, this.standing.x]);
   }
 
@@ -105,9 +107,14 @@ export class PairSweep {
     return this.found.pair.a.dF;
   }
 
-  private compressed(): CompressedBins {
+  /** New ground for where the pair stands. */
+  private broken(): SweepGround {
     ownColumns(this);
-    return new CompressedBins(this.columns(), FIRST_BIN, this.last, this.kind.order);
+    const { weigher, order, numerics } = this.kind;
+    const { pair, band } = this.found;
+    const sides = { spectra: [pair.a, pair.b], shares: this.shares, scales: this.standing.scales };
+    if (order === null) return new TableGround(this.columns(), this.last, weigher, band, sides, numerics.kinkChange);
+    return new CompressedGround(this.columns(), this.last, order, weigher, sides);
   }
 
   private columns(): BinColumns {
@@ -120,20 +127,8 @@ export class PairSweep {
 
   /** Columns of bins stand in arrays that sweeps share: the one that comes back fills them anew. */
   private own(): void {
-    if (columnsOwner !== this) this.bins.bins = this.columns();
+    if (columnsOwner !== this) this.ground.refill(this.columns());
     ownColumns(this);
-  }
-
-  /** Of the spectra as they are, whatever they stand scaled by. */
-  private bare(): BlockPowers {
-    const { a, b } = blockPowers(this.bins);
-    const [sa, sb] = this.standing.scales;
-    return { a: a.map((x) => x / (sa * sa)), b: b.map((x) => x / (sb * sb)) };
-  }
-
-  /** Half the shifts, in cycles per bin, over which the widest block turns by what its nodes carry. */
-  private get window(): number {
-    return MOST_TURN_RAD / (Math.PI * blockSize(this.last));
   }
 
   private rangeAt(secondsPerUnit: number, band: Band): ReturnType<typeof rangeFor> {
@@ -148,7 +143,7 @@ export class PairSweep {
     this.own();
     const range = this.rangeAt(2 ** place, band);
     const delta = this.expected(2 ** place) - this.standing.x;
-    return lagAnchor({ a: pair.a, b: pair.b, response, bins: this.bins, standing: this.standing, weigher, range, grid: this.grid, delta });
+    return lagAnchor({ a: pair.a, b: pair.b, response, ground: this.ground, standing: this.standing, weigher, range, grid: this.grid, delta });
   }
 
   /** Where the peak is likely to stand: on the line through the last two. */
@@ -157,14 +152,14 @@ export class PairSweep {
     if (p === undefined) return this.standing.x;
     if (q === undefined || q[0] === p[0]) return p[1];
     const line = q[1] + ((q[1] - p[1]) * (secondsPerUnit - q[0])) / (q[0] - p[0]);
-    return Math.abs(line - q[1]) < USED_WINDOW * this.window ? line : q[1];
+    return Math.abs(line - q[1]) < USED_WINDOW * this.ground.window ? line : q[1];
   }
 
   /** Newton steps on |ẑ|²; the last is taken by the sums it came from, whose third order it leaves out (1e-9 of a thousandth of a cell's step). */
   private climb(lag: NodeLag, start: number): Peak | null {
     const cell = 1 / (this.grid.size * this.grid.stride);
     let delta = start;
-    for (let step = 0; step < MOST_STEPS && Math.abs(delta) < this.window; step++) {
+    for (let step = 0; step < MOST_STEPS && Math.abs(delta) < this.ground.sight; step++) {
       const d = lag.at(delta);
       const slope = d.re * d.re1 + d.im * d.im1;
       const bend = d.re1 * d.re1 + d.im1 * d.im1 + d.re * d.re2 + d.im * d.im2;
@@ -180,10 +175,10 @@ export class PairSweep {
   }
 
   /** The highest hill, if it can be told from the others; null where only the bins can tell. */
-  private highest(lag: NodeLag, band: NodeBand, { bracket, share }: HeldBracket, seconds: number, scale: number): Peak | null {
+  private highest(lag: NodeLag, band: NodeBand, range: BinRange, { bracket, share }: HeldBracket, seconds: number, scale: number): Peak | null {
     const peak = this.climb(lag, this.expected(seconds) - this.standing.x);
     const [sa, sb] = this.standing.scales;
-    const certified = peak === null ? null : this.certified(peak, lag, scale, bracket, distanceBound(this.bins, this.powers, band, scale / (sa * sb), bracket, share));
+    const certified = peak === null ? null : this.certified(peak, lag, scale, bracket, this.ground.distance(band, range, scale / (sa * sb), bracket, share));
     this.lattice.note(Math.log2(seconds), certified !== null);
     return certified;
   }
@@ -194,24 +189,16 @@ export class PairSweep {
     let best = peak;
     const others = rivals(bracket, this.grid, heightOf(peak), distance + rise, this.standing.x + peak.delta);
     if (others === null) return null;
+    const heights = others.length > 0 ? lag.heights(this.ground.sight) : null;
     for (const other of others) {
       const delta = peak.delta + other;
-      if (Math.abs(delta) > this.window) return null;
-      if (lag.heightAt(delta) / scale < heightOf(peak) - rise) continue;
+      if (Math.abs(delta) > this.ground.sight) return null;
+      if (heights!.at(delta) / scale < heightOf(peak) - rise - HEIGHT_ROOM) continue;
       const top = this.climb(lag, delta);
       if (top === null) return null;
       if (heightOf(top) > heightOf(best)) best = top;
     }
     return best;
-  }
-
-  private looseEdges(band: NodeBand, norms: readonly [number, number]): boolean {
-    const { a, b } = this.found.pair;
-    return [a, b].some((s, i) => {
-      const { at } = powersOf(s);
-      const doubt = band.edges.doubt.reduce((sum, { bin, weight }) => sum + weight * at[bin]!, 0);
-      return Math.abs(doubt) > (SETTLED * this.shares[i]! * norms[i]!) / this.standing.scales[i]! ** 2;
-    });
   }
 
   /**
@@ -223,37 +210,37 @@ export class PairSweep {
    * Source: engine design (compressed nodes, certificate of the global maximum).
    */
   outcomeAt(request: MatchRequest): SweptAlignment | null {
-    const { freedom, weigher } = this.kind;
+    const { freedom } = this.kind;
     const seconds = request.a.secondsPerUnit;
     const range = this.rangeAt(seconds, request.band);
     // Anchors are made before the band of the mass itself: both are weighed in the same arrays.
     const held = freedom.time ? this.lattice.around(Math.log2(seconds)) : null;
     if (freedom.time && held === null) return null;
     this.own();
-    const band = nodeBand(this.bins, weigher, range);
+    const band = this.ground.weigh(range);
     if (band === null) return null;
-    const [normA, normB, gapOfNorms] = nodeNorms(this.bins, band);
-    if (!(normA > 0 && normB > 0) || this.looseEdges(band, [normA, normB])) return null;
+    const [normA, normB, gapOfNorms] = nodeNorms(band);
+    if (!(normA > 0 && normB > 0) || !this.ground.isSettled(band, [normA, normB])) return null;
     const pair: Pair = { ...this.found.pair, secondsPerUnit: [seconds, request.b.secondsPerUnit], weights: { ...this.found.pair.weights, dfHz: range.dfHz } };
-    const lag = new NodeLag(this.bins, band);
+    const lag = new NodeLag(band);
     const [rootA, rootB] = [Math.sqrt(normA), Math.sqrt(normB)];
-    const peak = held === null ? this.unmoved(lag, pair) : this.highest(lag, band, held, seconds, rootA * rootB);
-    if (peak === null) return null;
+    const peak = held === null ? this.unmoved(lag, pair) : this.highest(lag, band, range, held, seconds, rootA * rootB);
+    if (peak === null || Math.abs(peak.delta) > this.ground.window) return null;
     const turnRad = freedom.turn ? Math.atan2(peak.im, peak.re) : 0;
     const gap = -gapOfNorms / (rootA * rootB * (rootA + rootB));
-    const mismatch = nodeResidual(this.bins, band, { scaleA: 1 / rootA, scaleB: 1 / rootB, gap, delta: peak.delta, turnRad }) / 2;
+    const mismatch = nodeResidual(band, { scaleA: 1 / rootA, scaleB: 1 / rootB, gap, delta: peak.delta, turnRad }) / 2;
     const x = this.standing.x + peak.delta;
     const turn = this.standing.turnRad + turnRad;
     const [sa, sb] = this.standing.scales;
     const norms = [normA / (sa * sa), normB / (sb * sb)] as const;
     this.seen = [...this.seen.slice(-1), [seconds, x]];
-    if (Math.abs(peak.delta) > USED_WINDOW * this.window) this.stand({ x, turnRad: turn, scales: [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] });
+    if (Math.abs(peak.delta) > USED_WINDOW * this.ground.window) this.stand({ x, turnRad: turn, scales: [1 / Math.sqrt(norms[0]), 1 / Math.sqrt(norms[1])] });
     return { value: 1 - mismatch, mismatch, x, turnRad: freedom.turn ? Math.atan2(Math.sin(turn), Math.cos(turn)) : 0, norms, pair };
   }
 
   private unmoved(lag: NodeLag, pair: Pair): Peak | null {
     const delta = xOfShift(pair, 0) - this.standing.x;
-    if (Math.abs(delta) > this.window) return null;
+    if (Math.abs(delta) > this.ground.window) return null;
     const { re, im } = lag.at(delta);
     return { delta, re, im };
   }
@@ -262,7 +249,7 @@ export class PairSweep {
   saw({ pair, alignment }: Found): void {
     if (pair.a.dF !== this.dF) return;
     this.seen = [...this.seen.slice(-1), [pair.secondsPerUnit[0]!, alignment.x]];
-    if (Math.abs(alignment.x - this.standing.x) < USED_WINDOW * this.window || !(alignment.norms[0] > 0 && alignment.norms[1] > 0)) return;
+    if (Math.abs(alignment.x - this.standing.x) < USED_WINDOW * this.ground.window || !(alignment.norms[0] > 0 && alignment.norms[1] > 0)) return;
     this.seen = this.seen.slice(-1);
     this.stand(standingOf(alignment));
   }
@@ -270,7 +257,6 @@ export class PairSweep {
   /** Makes the pair alike anew where the peak has moved far. */
   private stand(standing: Standing): void {
     this.standing = standing;
-    this.bins = this.compressed();
-    this.powers = this.bare();
+    this.ground = this.broken();
   }
 }

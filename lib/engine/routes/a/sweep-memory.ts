@@ -59,7 +59,7 @@ function sweepFrom(memory: SweepMemory, request: MatchRequest, freedom: Freedom,
   if (memory.found === null || response === 'complex') return null;
   const weigher = store.weigher(band.noise, numerics.noiseTableHalvings);
   const order = nodeOrder(weigher, band.fLowHz, Math.min(band.fHighHz, band.noise.fHighHz));
-  return order === null ? null : PairSweep.from(memory.found, { response, freedom, weigher, order, numerics });
+  return order === null && weigher.closedForm ? null : PairSweep.from(memory.found, { response, freedom, weigher, order, numerics });
 }
 
 /**
