@@ -66,6 +66,22 @@ describe('the search over many templates', () => {
     expect(hillsOf(scan, 1, factors).map(({ factor }) => factor)).toEqual([3]);
   });
 
+  it('lets a hill with an edge between two masses rise as far as it does', () => {
+    // Published by nobody: an independent numpy script, chirp-z transforms of two invented chirps at each mass and Simpson's rule in frequency.
+    const mass = [0.968, 0.977, 0.986, 0.9905, 0.995, 0.99695, 0.9995, 1.004, 1.0135, 1.023, 1.041, 1.06];
+    const match = [0.86116, 0.906057, 0.945608, 0.963955, 0.97423, 0.975258, 0.973689, 0.965919, 0.951, 0.922493, 0.816477, 0.71927];
+    const edged = (factor: number): number => {
+      const i = Math.max(1, mass.findIndex((m) => m >= factor));
+      return match[i - 1]! + ((match[i]! - match[i - 1]!) * (factor - mass[i - 1]!)) / (mass[i]! - mass[i - 1]!);
+    };
+    const smooth = (factor: number): number => 0.9736 - 12 * (factor - 1.04) ** 2;
+    const factors = [0.968, 0.986, 1.004, 1.023, 1.041, 1.06];
+    const sharp = (t: number, factor: number): number => (t === 0 ? edged(factor) : smooth(factor));
+    const rough = Float32Array.from([0, 1].flatMap((t) => factors.map((factor) => sharp(t, factor))));
+    const hill = hillsOf({ rough, sharp }, 2, factors).find(({ template }) => template === 0);
+    expect(hill?.ceiling).toBeGreaterThan(Math.max(...match));
+  });
+
   it('finds a stretched copy wherever the grid of masses begins', () => {
     const [a, copy] = [threeModes(1), threeModes(1.1)];
     for (const low of [0.66, 0.676, 0.688, 0.752]) {

@@ -55,11 +55,19 @@ class SharpValues {
     private readonly factors: readonly number[],
   ) {}
 
-  at(template: number, g: number): number {
+  /** Place of the last factor. */
+  get last(): number {
+    return this.factors.length - 1;
+  }
+
+  /** At a place in the grid, or half-way to the next; places beyond its ends are its ends. */
+  at(template: number, place: number): number {
+    const g = Math.min(this.last, Math.max(0, place));
     const key = template * this.factors.length + g;
     const known = this.known.get(key);
     if (known !== undefined) return known;
-    const made = this.scan.sharp(template, this.factors[g]!);
+    const [low, high] = [this.factors[Math.floor(g)]!, this.factors[Math.ceil(g)]!];
+    const made = this.scan.sharp(template, low === high ? low : Math.sqrt(low * high));
     this.known.set(key, made);
     return made;
   }
@@ -83,35 +91,22 @@ function likely(scan: Scanned, templates: number, factors: number): { t: number;
   return found;
 }
 
-const QUARTIC_POINTS = 33;
-/** The polynomial through values at −2 … 2. */
-function quartic([a, b, c, d, e]: readonly number[], x: number): number {
-  const [p, q] = [(b! + d!) / 2, (d! - b!) / 2];
-  const [r, s] = [(a! + e!) / 2, (e! - a!) / 2];
-  const [even4, odd3] = [(r - c! - 4 * (p - c!)) / 12, (s - 2 * q) / 6];
-  const [even2, odd1] = [p - c! - even4, q - odd3];
-  return c! + x * (odd1 + x * (even2 + x * (odd3 + x * even4)));
+/**
+ * What a hill may reach that is highest at one of its points: half the drop to the farther neighbour above it, twice what a hill of
+ * constant bend can rise, and all that one with straight flanks can. The shift that fits best may jump between masses, so hills have edges.
+ */
+function reachOf(values: SharpValues, t: number, at: number, step: number): number {
+  const here = values.at(t, at);
+  return here + Math.max(0, here - Math.min(values.at(t, at - step), values.at(t, at + step))) / 2;
 }
 
-/**
- * How far a hill may rise above its grid point. Where five points stand in a row, the quartic through them and the parabola
- * through three differ by more than either errs, twice that is allowed; else half the drop to the farther neighbour, twice
- * what a hill of constant bend can rise.
- */
-function riseOf(values: SharpValues, t: number, g: number, factors: number): number {
-  const here = values.at(t, g);
-  if (factors === 1) return 0;
-  const beside = [Math.max(0, g - 1), Math.min(factors - 1, g + 1)].map((at) => values.at(t, at));
-  const drop = here - Math.min(...beside);
-  if (g < 2 || g + 2 >= factors || Math.max(...beside) > here) return Math.max(0, drop / 2);
-  const five = [-2, -1, 0, 1, 2].map((step) => values.at(t, g + step));
-  let [four, two] = [0, 0];
-  for (let i = 0; i <= QUARTIC_POINTS; i++) {
-    const x = (2 * i) / QUARTIC_POINTS - 1;
-    four = Math.max(four, quartic(five, x) - here);
-    two = Math.max(two, ((five[3]! - five[1]!) / 2) * x + ((five[1]! + five[3]!) / 2 - here) * x * x);
-  }
-  return Math.min(drop / 2, Math.max(four, two) + 2 * Math.abs(four - two));
+/** The same from half a step on either side, where the grid itself does not settle it. */
+function ceilingOf(values: SharpValues, t: number, g: number, best: number): number {
+  if (values.last === 0) return values.at(t, g);
+  const coarse = reachOf(values, t, g, 1);
+  if (coarse + SHARP < best) return coarse;
+  const top = [g - 0.5, g, g + 0.5].reduce((high, at) => (values.at(t, at) > values.at(t, high) ? at : high), g);
+  return reachOf(values, t, top, 0.5);
 }
 
 /** The grid point above both neighbours that lies uphill: a rough value may point beside the top. */
@@ -136,7 +131,8 @@ export function hillsOf(scan: Scanned, templates: number, factors: readonly numb
   const places = likely(scan, templates, factors.length);
   for (const { t, g } of places) values.at(t, g);
   const tops = new Map(places.map(({ t, g }) => { const top = uphill(values, t, g, factors.length); return [`${t} ${top}`, { t, g: top }] as const; }));
-  const hills = [...tops.values()].map(({ t, g }): Hill => ({ template: t, factor: g, ceiling: values.at(t, g) + riseOf(values, t, g, factors.length) + SHARP }));
+  const best = [...tops.values()].reduce((most, { t, g }) => Math.max(most, values.at(t, g)), 0);
+  const hills = [...tops.values()].map(({ t, g }): Hill => ({ template: t, factor: g, ceiling: ceilingOf(values, t, g, best) + SHARP }));
   return hills.sort((p, q) => q.ceiling - p.ceiling || p.template - q.template || p.factor - q.factor);
 }
 
