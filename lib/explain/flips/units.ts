@@ -57,19 +57,28 @@ function ratios(values: readonly (number | null)[], reference: number | null): n
   return known.length === values.length ? known : null;
 }
 
-/** With B instead of B², or with B² and no M²; the reference is the first point of a sweep, or another claim of the sheet. */
+/** With B instead of B², or with B² and no M²; the reference is the first point of a sweep, another claim of the sheet, or what the file was computed at. */
 export const fieldLaw: FlipsOfConvention = (context) => {
   if (!ofLuminosity.has(context.claim.quantity.id)) return [];
+  const file = ownField(context);
   const fields = atPoints(context, 'fieldGauss');
-  const reference = (isSwept(context, 'fieldGauss') ? fields[0] : siblingField(context, fields[0] ?? null)) ?? null;
+  const reference = (isSwept(context, 'fieldGauss') ? fields[0] : (siblingField(context, fields[0] ?? null) ?? file?.gauss)) ?? null;
   const linear = reference !== null && fields.some((b) => b !== reference) ? ratios(fields, reference) : null;
   const masses = atPoints(context, 'totalMassMsun');
-  const unscaled = isSwept(context, 'totalMassMsun') ? (ratios(masses, masses[0] ?? null)?.map((ratio) => ratio ** 2) ?? null) : null;
+  const first = isSwept(context, 'totalMassMsun') ? (masses[0] ?? null) : (file?.massMsun ?? null);
+  const unscaled = first !== null && masses.some((mass) => mass !== first) ? (ratios(masses, first)?.map((ratio) => ratio ** 2) ?? null) : null;
   return makeFlips(context, [
     linear === null ? null : factor('C50', `linear-from-${reference}`, linear, `the number is carried on from ${reference} G with B instead of B²`),
     unscaled === null ? null : factor('C50', 'no-mass', unscaled, 'the number is carried on from the first mass without M²'),
   ]);
 };
+
+/** Field and mass at which a file of φ₂ was computed; null where it is per unit of field, or does not say. */
+function ownField({ waveforms }: FlipContext): { readonly gauss: number; readonly massMsun: number } | null {
+  const file = waveforms.find(({ variable }) => variable === 'phi2');
+  const [gauss, massMsun] = [file?.binary.fieldGauss, file?.ownTotalMassMsun ?? undefined];
+  return file?.amplitudeUnit !== 'perField' && gauss !== undefined && massMsun !== undefined ? { gauss, massMsun } : null;
+}
 
 /** The claim of the same quantity that stands next in the sheet and has another field. */
 function siblingField({ siblings }: FlipContext, own: number | null): number | null {

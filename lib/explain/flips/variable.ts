@@ -28,10 +28,12 @@ export const tetrad: FlipsOfConvention = (context) => {
 
 const hasModes = ({ content }: Waveform): boolean => content.kind === 'modes';
 
-/** Sense of rotation of one of two records; of a recoil only the direction hangs on it, and that is not claimed. */
+/** Which role's file may turn the other way: of a recoil only the direction hangs on it, and that is not claimed; of one record alone, the sign of J_z. */
+const turning = ({ claim: { of, quantity } }: FlipContext): string[] => (of.a === undefined ? [] : of.b !== undefined ? ['a', 'b'] : quantity.id === 'radiated-angular-momentum' ? ['a'] : []);
+
 export const rotation: FlipsOfConvention = (context) =>
-  context.claim.of.a !== undefined && context.claim.of.b !== undefined && context.waveforms.every(hasModes)
-    ? makeFlips(context, ['a', 'b'].map((role) => ({ convention: 'C22', option: `conjugate-${role}`, clause: `${role} rotates the other way: its file gives h₊ + ih×`, change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'conjugate', roles: [role] }] }, exchange: true, telling: { supports: [/h_?\+\s*\+\s*i/i, /plus\s*\+\s*i\s*\*?\s*cross/i] } })))
+  context.waveforms.every(hasModes)
+    ? makeFlips(context, turning(context).map((role) => ({ convention: 'C22', option: `conjugate-${role}`, clause: `${role} rotates the other way: its file gives h₊ + ih×`, change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'conjugate', roles: [role] }] }, exchange: true, telling: { supports: [/h_?\+\s*\+\s*i/i, /plus\s*\+\s*i\s*\*?\s*cross/i] } })))
     : [];
 
 const couples = new Set(['recoil', 'radiated-angular-momentum', 'mode-content', 'degeneracy', 'snr', 'match', 'mismatch', 'overlap']);
@@ -45,11 +47,21 @@ export const modeLabel: FlipsOfConvention = (context) =>
     ? makeFlips(context, [{ convention: 'C23', option: 'relabel', clause: 'm is read as −m, without the minus sign that odd ℓ then takes', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'relabel-m' }] }, exchange: true }])
     : [];
 
+/** With the mirror's modes the two signs of m push alike in the orbital plane; the divisor must not hang on the energy. */
+function halvesInPlane({ claim, waveforms, used }: FlipContext): boolean {
+  const [waveform] = waveforms;
+  if (claim.quantity.id !== 'recoil' || waveform?.content.kind !== 'modes') return false;
+  const isMirror = waveform.negativeM !== 'none' && waveform.negativeM !== 'given' && waveform.content.modes.every(({ m }) => m >= 0);
+  return isMirror && (used.get('normaliseBy')?.value !== 'remnant' || waveform.binary.remnantMass !== undefined);
+}
+
 export const negativeModes: FlipsOfConvention = (context) => {
   if (!gravitational(context) || !mirrored(context)) return [];
+  const assumed = context.waveforms.every(({ negativeM }) => negativeM === null);
   const drafts: (FlipDraft | null)[] = [
-    oddL(context) ? { convention: 'C24', option: 'no-sign', clause: 'modes of negative m are the plain conjugate of their partner, without the minus sign of odd ℓ', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'mirror-sign' }] }, assumed: context.waveforms.every(({ negativeM }) => negativeM === null) } : null,
-    { convention: 'C24', option: 'absent', clause: 'modes of negative m are left out', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'drop-negative-m' }] }, assumed: context.waveforms.every(({ negativeM }) => negativeM === null) },
+    oddL(context) ? { convention: 'C24', option: 'no-sign', clause: 'modes of negative m are the plain conjugate of their partner, without the minus sign of odd ℓ', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'mirror-sign' }] }, assumed } : null,
+    { convention: 'C24', option: 'absent', clause: 'modes of negative m are left out', change: { kind: 'rerun', settings: {}, inputs: [{ edit: 'drop-negative-m' }] }, assumed },
+    halvesInPlane(context) ? { convention: 'C24', option: 'absent-in-plane', clause: 'modes of negative m are left out, and only the part of the recoil in the orbital plane is counted', change: { kind: 'factor', factor: 0.5 }, assumed } : null,
   ];
   return makeFlips(context, drafts);
 };
