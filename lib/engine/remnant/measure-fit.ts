@@ -22,8 +22,9 @@ function componentsOf({ observable }: FitPoint, readings: readonly FitReading[])
   return { ...Object.fromEntries(named), halfRange: halfRangeOf(readings) };
 }
 
+/** Equal masses with equal spins recoil by nothing at all, not by a rounded nothing. */
 const computation = ({ observable }: FitPoint, value: number): BudgetLine => ({
-  component: 'Rounding in double precision', id: 'E01', group: 'computation', u: LEAST * Math.max(Math.abs(value), usual[observable]),
+  component: 'Rounding in double precision', id: 'E01', group: 'computation', u: value === 0 ? 0 : LEAST * Math.max(Math.abs(value), usual[observable]),
   note: 'The fit is a closed form; what it holds implicitly is bisected to the last bit.',
 });
 

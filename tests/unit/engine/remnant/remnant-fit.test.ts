@@ -42,6 +42,11 @@ describe('a published fit', () => {
     expect(spinning.value).toAgreeWith((0.76121 + 0.76113 + 0.7607) / 3, 1e-5);
     expect(spinning.components).toMatchObject({ pan2011: null, buonanno2008: expect.closeTo(0.758, 3) });
   });
+  it('a recoil that symmetry forbids is nothing, without a rounding of its own', () => {
+    const [point] = measure({ massRatio: 1, chi1z: 0.6, chi2z: 0.6, observable: 'recoil' }).points;
+    expect(point).toMatchObject({ value: 0, expandedUncertainty: 0 });
+  });
+
   it('does not know its scatter where one group speaks alone', () => {
     const { points, budget } = measure({ massRatio: 2, chi1z: 0, chi2z: 0, observable: 'recoil' });
     expect(points[0]!.components).toEqual({ campanelli2007: expect.closeTo(156.7, 1), halfRange: null });
