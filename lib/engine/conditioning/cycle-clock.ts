@@ -17,16 +17,18 @@ function phaseTrack(axis: Float64Array, re: Float64Array, im: Float64Array, forw
   const n = axis.length;
   const at = (i: number): number => (forward ? i : n - 1 - i);
   let i = 0;
-  let phase = 0;
+  // Not a number of its own: a closure would box it anew at every sample.
+  const phase = new Float64Array(1);
   const times = [axis[at(0)]!];
   const cycles = [0];
   const advance = (): boolean => {
     if (i + 1 >= n) return false;
     const p = at(i);
-    const q = at(++i);
-    phase += Math.atan2(im[q]! * re[p]! - re[q]! * im[p]!, re[q]! * re[p]! + im[q]! * im[p]!);
+    const q = at(i + 1);
+    phase[0]! += Math.atan2(im[q]! * re[p]! - re[q]! * im[p]!, re[q]! * re[p]! + im[q]! * im[p]!);
+    i++;
     times.push(axis[q]!);
-    cycles.push(Math.abs(phase) / (2 * Math.PI));
+    cycles.push(Math.abs(phase[0]!) / (2 * Math.PI));
     return true;
   };
   return { times, cycles, advance };

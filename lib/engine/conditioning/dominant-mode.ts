@@ -45,6 +45,7 @@ function peakOfTiny(re: Float64Array, im: Float64Array): number {
 export function dominantMode(modes: readonly Mode[]): Mode | undefined {
   const pools = [modes.filter((mode) => mode.m > 0), modes.filter((mode) => mode.m !== 0), modes];
   const pool = pools.find((candidates) => candidates.length > 0) ?? [];
+  if (pool.length === 1) return pool[0];
   let best: Mode | undefined;
   let top = -1;
   for (const mode of pool) {

@@ -136,9 +136,10 @@ export function slopesOf(series: ResponseSeries, { first: from, re }: PackedSide
   const first = Math.ceil(from / stride);
   const n = Math.max(0, Math.floor((from + re.length - 1) / stride) - first + 1);
   const { values, origin, dt, order } = series;
-  if (timed.length !== values.length) timed = new Float64Array(values.length);
+  if (timed.length < values.length) timed = new Float64Array(2 * values.length);
+  const product = timed.subarray(0, values.length);
   const turn = -2 * Math.PI * dt * dF * stride;
-  for (let j = 0; j < values.length; j++) timed[j] = turn * (j - origin) * values[j]!;
-  if (n > 0) lookedAt(seriesBins(timed, series, dF * stride, first, n), order, first, 1, n);
+  for (let j = 0; j < values.length; j++) product[j] = turn * (j - origin) * values[j]!;
+  if (n > 0) lookedAt(seriesBins(product, series, dF * stride, first, n), order, first, 1, n);
   return { first, re: looked.re.subarray(0, n), im: looked.im.subarray(0, n) };
 }

@@ -9,12 +9,14 @@ export interface MatchBounds {
   readonly most: number;
 }
 
-/** Lags for each bin by which the power spreads: between them the modulus rises by a third at most. */
+/** Lags for each bin by which the power spreads: between them the modulus rises by a third of its most. */
 const LAGS_PER_SPREAD = 4;
 const LEAST_LAGS = 64;
 /** A Newton step shorter than this share of a lag leaves less than 1e-6 of the value. */
 const CLOSE = 0.015;
 const MOST_STEPS = 4;
+/** A summit may stand so little below the lag it is sought from: the promise of a last step errs by as much. */
+const SETTLED = 1 - 1e-6;
 const ROOM = 2e-5;
 
 interface Scratch {
@@ -85,18 +87,18 @@ function summitBeside(before: number, most: number, after: number): number {
   return bend < 0 && Number.isFinite(bend) ? Math.max(-0.5, Math.min(0.5, (low - high) / (2 * bend))) : 0;
 }
 
-/** The top of the hill beside the highest lag, of |c|². */
+/** The top of the hill beside the highest lag, of |c|²; NaN where the steps do not settle on one. */
 function climbed(product: PairProduct, heights: Float64Array, at: number): number {
   const size = heights.length;
-  const most = heights[at]!;
-  let lag = (at + summitBeside(heights[at > 0 ? at - 1 : size - 1]!, most, heights[at + 1 < size ? at + 1 : 0]!)) / size;
-  for (let round = 1; ; round++) {
+  let lag = (at + summitBeside(heights[at > 0 ? at - 1 : size - 1]!, heights[at]!, heights[at + 1 < size ? at + 1 : 0]!)) / size;
+  for (let round = 0; round < MOST_STEPS; round++) {
     const { height, step } = newtonStep(product, lag);
     const lags = Math.abs(step) * size;
-    if (!(lags < 1)) return most;
-    if (lags < CLOSE || round === MOST_STEPS) return Math.max(most, height);
+    if (lags < CLOSE) return height;
+    if (!(lags < 1)) break;
     lag += step;
   }
+  return Number.NaN;
 }
 
 /** The highest lag not beside place `at` that is higher than `least`; 0 where there is none. */
@@ -112,7 +114,10 @@ function otherAbove(heights: Float64Array, at: number, least: number): number {
 /** The top of the highest hill, and how high |c| may be at any lag. */
 function topsOf(product: PairProduct, size: number, unseen: number): { readonly top: number; readonly highest: number } {
   const { heights, at } = atLags(product, size);
-  const top = Math.sqrt(climbed(product, heights, at));
+  const most = Math.sqrt(heights[at]!);
+  const summit = Math.sqrt(climbed(product, heights, at));
+  if (!(summit > most * SETTLED)) return { top: most, highest: most + unseen };
+  const top = Math.max(summit, most);
   // A lag that is not beside the highest one counts where it could hide more.
   const other = otherAbove(heights, at, Math.max(0, top - unseen) ** 2);
   return { top, highest: other === 0 ? top : Math.max(top, Math.sqrt(other) + unseen) };

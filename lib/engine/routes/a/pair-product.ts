@@ -57,7 +57,7 @@ const TURN = 2 * Math.PI;
  * Shape:  one lag of a product.
  * Units:  lags in cycles per bin.
  * Error:  of third order in the step.
- * Fails:  never; where the curve bends upwards there is no step.
+ * Fails:  never; where the curve bends upwards the step is infinite.
  * Source: Newton's method; bins as far above the middle as below it turn by opposite angles, so that one rotor serves two.
  */
 export function newtonStep({ values, n }: PairProduct, x: number): { readonly height: number; readonly step: number } {
@@ -92,6 +92,6 @@ export function newtonStep({ values, n }: PairProduct, x: number): { readonly he
   const height = zr * zr + zi * zi;
   const slope = 2 * (zr * dr + zi * di);
   const bend = 2 * (dr * dr + di * di + zr * sr + zi * si);
-  if (!(bend < 0)) return { height, step: 0 };
+  if (!(bend < 0)) return { height, step: Infinity };
   return { height: height - (slope * slope) / (2 * bend), step: -slope / bend / TURN };
 }

@@ -46,9 +46,11 @@ export function surveyRecord(axis: Float64Array, { re, im }: ComplexSeries): Rec
     a = c;
     b = d;
   }
+  // A copy: accumulators that a closure holds would be boxed at every sample.
+  const doubtful = { from, to, top };
   return {
     fastest: top > 0 ? Math.sqrt(rateTop / top) / (2 * Math.PI) : 0,
-    isFine: () => from >= to || isFinelySampled({ re, im }, { from, to, top }),
+    isFine: () => doubtful.from >= doubtful.to || isFinelySampled({ re, im }, doubtful),
   };
 }
 

@@ -113,12 +113,16 @@ function surveysOf(axis: Float64Array, parts: readonly Part[]): RecordSurvey[] {
 export function timeSource(waveform: Waveform): TimeSource {
   const axis = exactAxis(waveform);
   const { parts, real, angular } = partsOf(waveform);
-  const surveys = real ? [] : surveysOf(axis, parts);
+  // Surveyed when first asked for, just before the samples are used: a bank's records do not all fit the processor's cache.
+  let surveyed: RecordSurvey[] | null = null;
+  const surveys = (): RecordSurvey[] => (surveyed ??= surveysOf(axis, parts));
+  let fastest: number | null = null;
+  const rateOf = (): number => Math.max(0, ...(real ? parts.map((part) => fastestOfReal(axis, part.re)) : surveys().map((survey) => survey.fastest)));
   const polar = new Map<number, PolarSeries | null>();
   const polarForm = (index: number): PolarSeries | null => {
-    const known = polar.get(index);
-    if (known !== undefined) return known;
-    const made = surveys[index]!.isFine() ? null : polarOf(parts[index]!);
+    const kept = polar.get(index);
+    if (kept !== undefined) return kept;
+    const made = surveys()[index]!.isFine() ? null : polarOf(parts[index]!);
     polar.set(index, made);
     return made;
   };
@@ -157,7 +161,9 @@ export function timeSource(waveform: Waveform): TimeSource {
     axis,
     span: axis[axis.length - 1]! - axis[0]!,
     nyquist: nyquistFrequency(waveform),
-    fastest: Math.max(0, ...(real ? parts.map((part) => fastestOfReal(axis, part.re)) : surveys.map(({ fastest }) => fastest))),
+    get fastest() {
+      return (fastest ??= rateOf());
+    },
     response,
     lineOfSight,
     mode: partOn,
