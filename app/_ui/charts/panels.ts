@@ -52,6 +52,15 @@ const isLonely = (series: FigureSeries): boolean => series.values.filter((value)
 export const drawnDashed = (figure: Figure, series: FigureSeries): boolean =>
   series.role === 'recomputed' && (figure.kind === 'waveforms' || figure.series.some(({ role }) => role === 'varied'));
 
+const patterns: readonly (readonly number[])[] = [[], [7, 3], [2, 2.5], [9, 3, 2, 3], [12, 3, 2, 3, 2, 3]];
+
+/** Strokes and gaps of a line; empty for a solid one. Lines of one colour and one unit never share a pattern. */
+export function dashOf(figure: Figure, series: FigureSeries): readonly number[] {
+  if (drawnDashed(figure, series)) return [5, 3];
+  const alike = figure.series.filter((s) => s.role === series.role && s.unit === series.unit && s.axis === series.axis && !drawnAsPoints(figure, s));
+  return patterns[Math.max(0, alike.indexOf(series)) % patterns.length] ?? [];
+}
+
 /** Plots of one claim move their cursors together when their horizontal axes mean the same. */
 export const cursorGroup = (claimId: string, figure: Figure): string => [claimId, figure.x.label, figure.x.unit].map(word).join('.');
 

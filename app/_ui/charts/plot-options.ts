@@ -2,7 +2,7 @@ import type uPlot from 'uplot';
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 import type { Palette } from '../tokens';
 import { acrossScale, axisScale, type AxisScale } from './axis-scale';
-import { drawnAsPoints, drawnDashed, drawnFull, panelsOf, type Panel } from './panels';
+import { dashOf, drawnAsPoints, drawnFull, panelsOf, type Panel } from './panels';
 
 export interface PlotSpec {
   readonly options: Omit<uPlot.Options, 'width'>;
@@ -39,7 +39,7 @@ function seriesOptions(figure: Figure, panel: Panel, series: FigureSeries, palet
   if (series.role === 'band-high' && figure.x.words) return { ...base, stroke, width: 1.6, points: { show: false }, paths: bars(panel.series.findIndex((s) => s.role === 'band-low') + 1) };
   if (series.role === 'band-low' || series.role === 'band-high') return { ...base, stroke: 'transparent', width: 0, points: { show: false } };
   if (drawnAsPoints(figure, series)) return { ...base, stroke, width: 0, points: { show: true, size: drawnFull(series) ? 7 : 9, width: 2.5, stroke, fill: drawnFull(series) ? stroke : palette.sheet } };
-  return { ...base, stroke, width: 1.6, dash: drawnDashed(figure, series) ? [5, 3] : undefined, points: { show: false } };
+  return { ...base, stroke, width: 1.6, dash: dashOf(figure, series).length > 0 ? [...dashOf(figure, series)] : undefined, points: { show: false } };
 }
 
 function bandsOf(figure: Figure, panel: Panel, palette: Palette): uPlot.Band[] {

@@ -5,7 +5,7 @@ import { UnitLabel } from '../math/unit-label';
 import { acrossEnds, acrossScale } from './axis-scale';
 import { nearestIndex, useCursorLink } from './cursor-link';
 import { PanelMount } from './panel-mount';
-import { cursorGroup, drawnAsPoints, drawnDashed, drawnFull, panelsOf } from './panels';
+import { cursorGroup, dashOf, drawnAsPoints, drawnFull, panelsOf } from './panels';
 import { colourOf } from './plot-options';
 import { PlotTools } from './plot-tools';
 import { readoutOf, steppedIndex } from './readout';
@@ -22,7 +22,7 @@ function Key({ figure }: { readonly figure: Figure }) {
             {drawnAsPoints(figure, s) ? (
               <circle cx="12" cy="4" r="3" fill={drawnFull(s) ? `var(--${colourOf(s)})` : 'none'} strokeWidth="2" stroke={`var(--${colourOf(s)})`} />
             ) : (
-              <path d="M0 4H24" fill="none" strokeWidth="1.6" stroke={`var(--${colourOf(s)})`} strokeDasharray={drawnDashed(figure, s) ? '5 3' : undefined} />
+              <path d="M0 4H24" fill="none" strokeWidth="1.6" stroke={`var(--${colourOf(s)})`} strokeDasharray={dashOf(figure, s).join(' ') || undefined} />
             )}
           </svg>
           {s.label}{s.unit && <>, <UnitLabel unit={s.unit} /></>}

@@ -1,6 +1,6 @@
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 import { acrossEnds, acrossScale, axisScale, type AxisScale } from './axis-scale';
-import { drawnAsPoints, drawnDashed, drawnFull, type Panel } from './panels';
+import { dashOf, drawnAsPoints, drawnFull, type Panel } from './panels';
 import { colourOf } from './plot-options';
 
 const most = 400;
@@ -50,7 +50,7 @@ function dotsOf(figure: Figure, series: FigureSeries, x: Span, y: Span): string 
 function Trace({ figure, series, x, y }: { readonly figure: Figure; readonly series: FigureSeries; readonly x: Span; readonly y: Span }) {
   const stroke = `var(--${colourOf(series)})`;
   if (drawnAsPoints(figure, series)) return <path d={dotsOf(figure, series, x, y)} stroke={stroke} strokeWidth={drawnFull(series) ? 6 : 9} strokeLinecap="round" vectorEffect="non-scaling-stroke" />;
-  return <path d={pathOf(figure, series.values, x, y)} fill="none" stroke={stroke} strokeWidth="1.6" strokeDasharray={drawnDashed(figure, series) ? '5 3' : undefined} vectorEffect="non-scaling-stroke" />;
+  return <path d={pathOf(figure, series.values, x, y)} fill="none" stroke={stroke} strokeWidth="1.6" strokeDasharray={dashOf(figure, series).join(' ') || undefined} vectorEffect="non-scaling-stroke" />;
 }
 
 /** The same panel without script: paths in a stretched SVG, the scales told in words below. */

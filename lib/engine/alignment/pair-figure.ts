@@ -6,8 +6,8 @@ const MOST_POINTS = 1200;
 /** Amplitudes below this share of the largest say nothing of a phase. */
 const AUDIBLE = 1e-3;
 
-/** Phase and amplitude difference against time, over the interval on which both records exist. */
-export function pairFigure({ a, b, mode, routes }: PairPoint, { aligned }: PairResult): Figure {
+/** Phase and amplitude difference against time, over the interval on which both records exist, and the window over which they were laid over each other. */
+export function pairFigure({ a, b, mode, routes, settings }: PairPoint, { aligned }: PairResult): Figure {
   const { t, phase, ratio, size } = { ...routes.A().along(aligned.timeShiftM, aligned.anchorM, aligned.from, aligned.to), size: a.tones.A };
   const loudest = size.re.reduce((top, x, i) => Math.max(top, Math.hypot(x, size.im[i]!)), 0);
   const stride = Math.max(1, Math.ceil(t.length / MOST_POINTS));
@@ -18,12 +18,15 @@ export function pairFigure({ a, b, mode, routes }: PairPoint, { aligned }: PairR
     return Math.hypot(size.re[at]!, size.im[at]!) > AUDIBLE * loudest;
   });
   const shown = (values: (i: number) => number): (number | null)[] => picked.map((i, k) => (heard[k] && Number.isFinite(values(i)) ? values(i) : null));
+  const [from, to] = aligned.window;
+  const inside = picked.map((i) => (t[i]! >= from && t[i]! <= to ? 0 : null));
   return {
-    kind: 'waveforms',
+    kind: 'curve',
     title: `${b.waveform.name} less ${a.waveform.name} after the alignment: ${toneName({ mode })}`,
     x: { label: `Time of ${a.waveform.name}`, unit: 'M', scale: 'linear', values: picked.map((i) => t[i]!) },
     series: [
-      { label: 'Phase difference', unit: 'rad', role: 'residual', axis: 'left', scale: 'linear', values: shown((i) => phase[i]! - aligned.phaseShift) },
+      { label: 'Phase difference', unit: 'rad', role: 'recomputed', axis: 'left', scale: 'linear', values: shown((i) => phase[i]! - aligned.phaseShift) },
+      ...(settings.alignment === 'window' ? [{ label: 'Alignment window', unit: 'rad', role: 'claimed', axis: 'left', scale: 'linear', values: inside } as const] : []),
       { label: 'Relative amplitude difference', unit: '', role: 'recomputed', axis: 'right', scale: 'linear', values: shown((i) => ratio[i]! - 1) },
     ],
   };

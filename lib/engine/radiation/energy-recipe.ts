@@ -3,7 +3,7 @@ import { energyFindings } from '../remnant/energy-findings';
 import { energyBefore } from './energy-before';
 import { energyOnPanels } from './energy-on-panels';
 import { ENERGY_FACTOR, energyOnSamples, totalEnergy, type ModeEnergy } from './energy-on-samples';
-import { energyFigure } from './flux-figure';
+import { energyFigure, modesFigure } from './flux-figure';
 import { roundingOfIntegral } from './input-rounding';
 import type { PreparedPoint } from './prepare-radiated';
 import { missingModesFindings, negativeModesFinding } from './radiation-findings';
@@ -46,5 +46,5 @@ export const energyRecipe: RadiationRecipe = {
     ...missingModesFindings(context.completed, listedButMissing(context.completed, context.point), restrictsModes(context.point), 'energy', 'Higher modes add about 1.6 % at equal mass and 7 % at 2:1.'),
     ...energyFindings(energyRecipe, context),
   ],
-  figures: (point, store, name) => [energyFigure(sampledAs(store, point, house), point.settings.startM, name)],
+  figures: (point, store, name) => [energyFigure(sampledAs(store, point, house), point.settings.startM, name), ...modesFigure(sampledAs(store, point, house), point.settings.startM, name)],
 };

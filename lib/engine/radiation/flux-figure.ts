@@ -1,5 +1,5 @@
 import type { Figure } from '../contract/measurement';
-import { ENERGY_FACTOR } from './energy-on-samples';
+import { ENERGY_FACTOR, energyOnSamples } from './energy-on-samples';
 import { powerInBlocks } from './flux-blocks';
 import type { SampledRadiation } from './news-on-samples';
 
@@ -71,4 +71,36 @@ export function energyFigure(radiation: SampledRadiation, startM: number, name: 
   const values = energyFlux(radiation);
   const running = { label: 'Radiated since the start', unit: 'M', values: runningIntegral(axis, startM, values) };
   return fluxFigure(`Energy flux of ${name} and the energy radiated since the start`, axis, startM, { label: 'Flux', unit: 'c⁵/G', values }, running);
+}
+
+/** More lines than this are not told apart. */
+const MOST_MODES = 5;
+
+/**
+ * What each mode carries away at every time, the loudest first.
+ * Shape:  at most five modes; none where there is only one.
+ * Units:  M and c⁵/G.
+ * Error:  for eyes alone.
+ * Fails:  never; a rate of nothing has no place on the axis and is null.
+ * Source: Q12.
+ */
+export function modesFigure(radiation: SampledRadiation, startM: number, name: string): Figure[] {
+  const { axis, news } = radiation;
+  const ranked = energyOnSamples(radiation, startM).map((mode, i) => ({ ...mode, i })).filter(({ energy }) => energy > 0).sort((p, q) => q.energy - p.energy).slice(0, MOST_MODES);
+  if (ranked.length < 2) return [];
+  const first = firstAfter(axis, startM);
+  const stride = Math.max(1, Math.ceil((axis.length - first) / MOST_POINTS));
+  const picked = Array.from({ length: axis.length - first }, (_, k) => first + k).filter((i, k) => k % stride === 0 || i === axis.length - 1);
+  const rate = (k: number, i: number): number | null => {
+    const power = ENERGY_FACTOR * (news[k]!.re[i]! ** 2 + news[k]!.im[i]! ** 2);
+    return power > 0 && Number.isFinite(power) ? power : null;
+  };
+  return [
+    {
+      kind: 'flux',
+      title: `Energy flux of ${name}, mode by mode`,
+      x: { label: 'Time', unit: 'M', scale: 'linear', values: picked.map((i) => axis[i]!) },
+      series: ranked.map(({ l, m, i: k }) => ({ label: `(${l},${m < 0 ? `−${-m}` : m}): flux`, unit: 'c⁵/G', role: 'recomputed', axis: 'left', scale: 'log', values: picked.map((i) => rate(k, i)) })),
+    },
+  ];
 }

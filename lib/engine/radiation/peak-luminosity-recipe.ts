@@ -3,7 +3,7 @@ import { houseValues } from '../contract/house-values';
 import { LUMINOSITY_ERG_PER_S } from '../units/constants';
 import { ENERGY_FACTOR, type ModeEnergy } from './energy-on-samples';
 import { sharesByEll } from './energy-recipe';
-import { energyFigure } from './flux-figure';
+import { energyFigure, modesFigure } from './flux-figure';
 import { peakOnPanels, peakOnSamples, type FluxPeak } from './flux-peak';
 import { relativeSlip } from './input-rounding';
 import { squared } from './news-on-samples';
@@ -81,5 +81,5 @@ export const peakLuminosityRecipe: RadiationRecipe = {
     ...negativeModesFinding(context.completed, context.completed.waveform.name, '; without them the luminosity would be half'),
     ...missingModesFindings(context.completed, listedButMissing(context.completed, context.point), restrictsModes(context.point), 'luminosity', 'Higher modes add to it too.'),
   ],
-  figures: (point, store, name) => [energyFigure(sampledAs(store, point, house), point.settings.startM, name)],
+  figures: (point, store, name) => [energyFigure(sampledAs(store, point, house), point.settings.startM, name), ...modesFigure(sampledAs(store, point, house), point.settings.startM, name)],
 };

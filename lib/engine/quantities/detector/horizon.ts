@@ -29,7 +29,7 @@ function loudnessAt(route: DetectorRoute, request: PointRequest, z: number): num
 }
 
 /** ln(ρ[(1+z)M, D_L(z)]/ρ*): a logarithm, so that a secant sees nearly a straight line. */
-function excess(route: DetectorRoute, request: PointRequest, z: number): number {
+export function excessAt(route: DetectorRoute, request: PointRequest, z: number): number {
   const { cosmology, threshold } = detectorPoint(request);
   return Math.log(loudnessAt(route, request, z) / luminosityDistanceMpc(z, cosmology) / threshold);
 }
@@ -73,7 +73,7 @@ function scanned({ scan }: RouteKit, request: PointRequest): Bracket[] {
   const z = logSpaced(SCAN_POINTS);
   return bracketsIn(
     z,
-    z.map((at) => excess(scan, request, at)),
+    z.map((at) => excessAt(scan, request, at)),
   );
 }
 
@@ -118,7 +118,7 @@ function confirmed(f: (z: number) => number, bracket: Bracket): { from: number; 
 }
 
 function solved(kit: RouteKit, request: PointRequest): number[] {
-  const f = (z: number): number => excess(kit.route, request, z);
+  const f = (z: number): number => excessAt(kit.route, request, z);
   const brackets = kit.route.name === 'A' ? scanned(kit, request) : interpolated(kit, request);
   const roots = brackets.flatMap((bracket) => {
     const ends = confirmed(f, bracket);
@@ -158,7 +158,7 @@ export function horizonOf(kit: RouteKit, request: PointRequest): Horizon {
 /** The same root under other numerics or data, by secant from where it was. */
 export function horizonAgain(kit: RouteKit, request: PointRequest, near: number): Horizon {
   if (!isSource(request)) return unredshifted(kit, request);
-  const f = (z: number): number => excess(kit.route, request, z);
+  const f = (z: number): number => excessAt(kit.route, request, z);
   let [a, b] = [near, near * (1 + 1e-4)];
   let [fa, fb] = [f(a), f(b)];
   for (let round = 0; round < 20 && Math.abs(fa) > 1e-14 && fa !== fb; round++) {

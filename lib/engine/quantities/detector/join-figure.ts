@@ -30,7 +30,7 @@ export function joinFigure({ a, band, response, declared, at }: DetectorPoint, a
       x: { label: 'frequency', unit: 'Hz', scale: 'log', values: f },
       series: [
         line(`${a.waveform.name}, used from ${joinHz} Hz on`, 'recomputed', numerical.map((v, i) => (f[i]! >= joinHz ? v : null))),
-        line(`${a.waveform.name}, left out`, 'band-low', numerical.map((v, i) => (f[i]! < joinHz ? v : null))),
+        line(`${a.waveform.name}, left out`, 'noise', numerical.map((v, i) => (f[i]! < joinHz ? v : null))),
         line('post-Newtonian', 'claimed', f.map(amplitude)),
       ],
     },

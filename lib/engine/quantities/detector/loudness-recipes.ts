@@ -2,7 +2,7 @@ import { ANY_DISTANCE_MPC, detectorPoint, type DetectorPoint } from '@/lib/engin
 import type { DeclaredSettings } from '@/lib/engine/contract/settings';
 import { weightedSpectrum } from '@/lib/engine/routes/a/weighted-spectrum';
 import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
-import { timeDilatedVolumeMpc3 } from '@/lib/engine/units/cosmology';
+import { houseCosmology, luminosityDistanceMpc, timeDilatedVolumeMpc3 } from '@/lib/engine/units/cosmology';
 import { horizonOf, horizonAgain } from './horizon';
 import { loudness } from './loudness';
 import { ROUNDING_FLOOR, type Evaluated, type Recipe } from './recipe';
@@ -44,13 +44,15 @@ function loudnessPair(kit: Parameters<Recipe['evaluate']>[0], point: DetectorPoi
 
 const ratioTraits = () => ({ maximise: null, loudness: true, absolute: false, needsDistance: false, horizon: false }) as const;
 
-/** "At equal M, D": where physical strains of different own distances are compared, both are brought to the one distance. */
+/** "At equal M, D": that of the redshift if one is declared; physical strains of different own distances are brought to one. */
 function atOneDistance(request: Parameters<Recipe['evaluate']>[1]): Parameters<Recipe['evaluate']>[1] {
   const { declared, a, b } = request;
   if (declared.distanceMpc !== undefined) return request;
   const own = [a.given.ownDistanceMpc, b?.given.ownDistanceMpc ?? null];
   const known = own.every((d) => d !== null) ? own[0]! : own.some((d) => d !== null) ? null : ANY_DISTANCE_MPC;
-  return known === null ? request : { ...request, declared: { ...declared, distanceMpc: known } };
+  if (known === null) return request;
+  const { redshift = 0, cosmology = houseCosmology } = declared;
+  return { ...request, declared: { ...declared, distanceMpc: redshift > 0 ? luminosityDistanceMpc(redshift, cosmology) : known } };
 }
 
 export const snrRatioRecipe: Recipe = {
@@ -83,7 +85,7 @@ function comovingVolumes(
 }
 
 export const volumeRatioRecipe: Recipe = {
-  traits: (declared) => ({ ...ratioTraits(), absolute: isComoving(declared), horizon: isComoving(declared) }),
+  traits: (declared) => ({ ...ratioTraits(), absolute: isComoving(declared), horizon: isComoving(declared), inRedshift: isComoving(declared) }),
   evaluate: (kit, request): Evaluated => {
     const { rhoA, rhoB } = loudnessPair(kit, detectorPoint(atOneDistance(request)));
     const ratio = rhoA / rhoB;

@@ -56,7 +56,7 @@ export function inclinationFigure({ matcher }: SightProblem, request: PointReque
       x: { label: 'inclination', unit: 'rad', scale: 'linear', values: inclinations },
       series: [
         line('lowest over azimuth', 'recomputed', rows.map((row) => Math.min(...row))),
-        line('highest over azimuth', 'band-high', rows.map((row) => Math.max(...row))),
+        line('highest over azimuth', 'noise', rows.map((row) => Math.max(...row))),
       ],
     },
   ];

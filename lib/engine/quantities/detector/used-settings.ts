@@ -48,7 +48,7 @@ function rowsOf(context: SettingsContext): Row[] {
   const masses = massMatters(given);
   const fromDistance = source && !traits.horizon && declared.redshift === undefined;
   const toDistance = traits.needsDistance && !traits.horizon && declared.distanceMpc === undefined && declared.redshift !== undefined;
-  const expands = fromDistance || toDistance || (traits.horizon && source);
+  const expands = fromDistance || toDistance || (traits.horizon && source) || traits.inRedshift === true;
   const weighs = context.allowed.includes('weight');
   const searchesMass = point.maximise.includes('templateMass');
   return [

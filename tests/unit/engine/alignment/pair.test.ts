@@ -145,10 +145,14 @@ describe('what a pair rests on, and what stops it', () => {
     expect(points[0]!.expandedUncertainty).toAgreeWith(2 * Math.hypot(line('E01').u!, line('rounding').u!), { relative: 1e-12 });
     expect(Math.abs(points[0]!.routes.A! - points[0]!.routes.B!)).toBeLessThan(1e-7);
   });
-  it('draws what is left in phase and amplitude', () => {
+  it('draws what is left in phase and amplitude, with the window over which the records were laid over each other', () => {
     const [figure] = measureTonesOf(phaseDifference, { a, b: still }, { window }, null, true).figures;
-    expect(figure!.series.map(({ unit }) => unit)).toEqual(['rad', '']);
-    expect(figure!.series[1]!.values.filter((v) => v !== null).every((v) => Math.abs(v - 0.02) < 1e-5)).toBe(true);
+    expect(figure!.series.map(({ label, unit }) => [label, unit])).toEqual([['Phase difference', 'rad'], ['Alignment window', 'rad'], ['Relative amplitude difference', '']]);
+    const shown = figure!.x.values.filter((_, i) => figure!.series[1]!.values[i] === 0);
+    expect([shown[0]! >= window[0], shown.at(-1)! <= window[1], shown.length > 10]).toEqual([true, true, true]);
+    const [unaligned] = measureTonesOf(phaseDifference, { a, b: still }, { alignment: 'none' }, null, true).figures;
+    expect(unaligned!.series).toHaveLength(2);
+    expect(figure!.series[2]!.values.filter((v) => v !== null).every((v) => Math.abs(v - 0.02) < 1e-5)).toBe(true);
   });
   it('has no number for a mode that one file lacks, a window or a time outside the records, or one polarisation', () => {
     expect(codes(still, { modes: [[3, 3]] })).toEqual(['engine/modes-missing stops-lodging']);

@@ -97,8 +97,9 @@ describe.each(all.map((quantity) => [quantity.id, quantity] as const))('%s', (_,
   it('draws a flux and what it adds up to, and gives the same bytes twice', () => {
     const [once, twice] = [measureOf(quantity, wave, {}, null, true), measureOf(quantity, wave, {}, null, true)];
     expect(JSON.stringify(once)).toBe(JSON.stringify(twice));
-    expect(once.figures).toHaveLength(1);
-    const [figure] = once.figures;
+    expect(once.figures.length).toBe(quantity === peakLuminosity ? 2 : 1);
+    const [figure, byMode] = once.figures;
+    for (const { label, unit, scale, values } of byMode?.series ?? []) expect([/^\(\d,−?\d\): flux$/.test(label), unit, scale, values.every((y) => y === null || y > 0)]).toEqual([true, 'c⁵/G', 'log', true]);
     expect(figure!.series.map(({ axis: side }) => side)).toEqual(['left', 'right']);
     for (const { values } of figure!.series) expect(values.every((y) => Number.isFinite(y))).toBe(true);
   });
