@@ -20,6 +20,8 @@ export interface DetectorTraits {
   readonly needsDistance: boolean;
   /** Solves for a distance at a threshold (horizons, comoving volumes). */
   readonly horizon: boolean;
+  /** Its value is a redshift or what lies within one: in either frame a distance is turned into it. */
+  readonly inRedshift?: boolean;
   /** Polarisations that are looked at unless the claim names others. */
   readonly response?: Response;
   /** Angles of the line of sight that the quantity goes over by itself where the claim does not fix them. */

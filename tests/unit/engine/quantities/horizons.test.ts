@@ -9,6 +9,14 @@ const horizon = (settings: object) => measured({ quantity: 'horizon-distance', a
 /** One horizon for several looks: it takes hundreds of spectra. */
 const found = horizon({ totalMassMsun: 60 });
 
+describe('a ratio of loudnesses', () => {
+  it('stands at the distance of the redshift that it is given', () => {
+    const settings = { ...band, totalMassMsun: 50, massFrame: 'source', redshift: 0.4 } as const;
+    const { components } = measured({ quantity: 'snr-ratio', a, b: a, settings }).points[0]!;
+    expect(components!['rhoA']).toAgreeWith(valueOf({ quantity: 'snr', a, settings }), { relative: 1e-12 });
+  });
+});
+
 describe('the horizon', () => {
   it('in the detector’s frame is the distance times ρ over the threshold', () => {
     const rho = valueOf({ quantity: 'snr', a, settings: { ...band, totalMassMsun: 80, distanceMpc: 500 } });
@@ -16,6 +24,12 @@ describe('the horizon', () => {
     expect(points[0]!.value!).toAgreeWith((500 * rho) / 8, { relative: 1e-12 });
     expect(assumed).toContain('threshold');
     expect(assumed).not.toContain('massFrame');
+    expect(assumed).not.toContain('cosmology');
+  });
+
+  it('as a redshift rests on the cosmology in either frame', () => {
+    const request = { quantity: 'horizon-redshift', a, settings: { ...band, totalMassMsun: 80, massFrame: 'detector' } } as const;
+    expect(measured(request).assumed).toContain('cosmology');
   });
 
   it('in the source’s frame is where ρ[(1+z)M, D_L(z)] meets the threshold, by both routes', () => {
