@@ -61,7 +61,7 @@ const ask = (door: DoorName, what: Ask = {}): Promise<Response> => askDoor(handl
 const asAuthor = (door: DoorName, what: Ask = {}): Promise<Response> => ask(door, { as: bearer(token.author), params: { id: draft }, ...what });
 const bytesOf = async (answer: Promise<Response>): Promise<readonly [number, string]> => [(await answer).status, await (await answer).text()];
 const read = async <T>(answer: Response | Promise<Response>): Promise<T> => (await (await answer).json()) as T;
-const paramsFor = (door: DoorName, id: string): Record<string, string> => ({ id, ...(door.includes('{fileId}') && { fileId: UNKNOWN }), ...(door.includes('{uploadId}') && { uploadId: UNKNOWN, number: '0' }), ...(door.includes('{variationId}') && { variationId: UNKNOWN }) });
+const paramsFor = (door: DoorName, id: string): Record<string, string> => ({ id, ...(door.includes('{fileId}') && { fileId: UNKNOWN }), ...(door.includes('{uploadId}') && { uploadId: UNKNOWN, number: '0' }), ...(door.includes('{variationId}') && { variationId: UNKNOWN }), ...(door.includes('{runId}') && { runId: UNKNOWN }) });
 const searchFor = (door: DoorName): string => (door.endsWith('/figures') ? `?run=${UNKNOWN}` : '');
 
 /** Everything a write could have left behind. */
@@ -465,6 +465,8 @@ describe('every other answer fits its schema', () => {
   });
 
   it('for a variation: one’s own beside the official number, and opened by its link once there is a record', async () => {
+    const offered = await read<{ readings: { id: string; factor: number | null }[] }>(asAuthor('GET /api/v1/submissions/{id}/variations', { params: { id: reviewed }, search: '?claimId=C1' }));
+    expect(offered.readings.find(({ id }) => id === 'C55:per-cent')).toMatchObject({ factor: 100 });
     const { variationId } = await read<{ variationId: string }>(asAuthor('POST /api/v1/submissions/{id}/variations', { params: { id: reviewed }, json: { ...VARIATION, changes: { settings: { fLowHz: 40, taper: null }, noise: { curve: 'G2' } }, note: 'Another curve.' } }));
     const one = { params: { id: reviewed, variationId } };
     expect(await read(asAuthor('GET /api/v1/submissions/{id}/variations/{variationId}', one))).toMatchObject({ id: variationId, visibility: 'private', run: { state: 'queued' }, official: { id: 'C1' } });
