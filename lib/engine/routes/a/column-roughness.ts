@@ -1,6 +1,6 @@
 import { chebyshevRule } from './chebyshev-rule';
 import type { ColumnReader } from './column-reader';
-import { BB, DD, IM, RE } from './node-lag';
+import { BB, IM, RE } from './node-lag';
 import { ORDER, WIDEST } from './noise-blocks';
 
 /** Turn of the phase over half the widest block that its nodes carry to the last digits. */
@@ -17,8 +17,7 @@ const four = (n: number): Four => [new Float64Array(n), new Float64Array(n), new
 const [nodes, series, own] = [four(ORDER), four(ORDER), four(1)];
 
 /** Turned product, |D|² and |b|² in place of the columns. */
-function turn(at: Four, i: number, angle: number): void {
-  const [c, s] = [Math.cos(angle + PHASE), Math.sin(angle + PHASE)];
+function turn(at: Four, i: number, c: number, s: number): void {
   const re = at[RE][i]! + at[BB][i]!;
   const im = at[IM][i]!;
   at[RE][i] = re * c - im * s;
@@ -53,7 +52,7 @@ function missedAt(reader: ColumnReader, bin: number): number {
   let worst = 0;
   const sums = [0, 0, 0, 0];
   TENTH.forEach((count, i) => {
-    reader.read(bin + i - 5, own, 0);
+    reader.bin(bin + i - 5, own);
     for (let c = 0; c < 4; c++) sums[c]! += count * own[c]![0]!;
   });
   for (const sum of sums) worst = Math.max(worst, MISSED * Math.abs(sum));
@@ -66,16 +65,22 @@ function worstOver(reader: ColumnReader, middle: number, half: number): number {
   const turnPer = (EXACT_TURN_RAD * half) / (WIDEST * reader.last);
   for (let j = 0; j < ORDER; j++) {
     reader.read(middle + half * points[j]!, nodes, j);
-    turn(nodes, j, turnPer * points[j]!);
+    turn(nodes, j, Math.cos(turnPer * points[j]! + PHASE), Math.sin(turnPer * points[j]! + PHASE));
   }
   toSeries();
   const [from, to] = [Math.max(reader.lowest, Math.ceil(middle - half)), Math.min(reader.last - 1, Math.floor(middle + half))];
+  const [stepC, stepS] = [Math.cos(turnPer / half), Math.sin(turnPer / half)];
+  const start = (turnPer * (from - middle)) / half + PHASE;
+  let [cos, sin] = [Math.cos(start), Math.sin(start)];
   let worst = 0;
   for (let k = from; k <= to; k++) {
     const x = (k - middle) / half;
-    reader.read(k, own, 0);
-    turn(own, 0, turnPer * x);
-    for (const c of [DD, RE, IM, BB]) worst = Math.max(worst, Math.abs(valueAt(series[c]!, x) - own[c]![0]!));
+    reader.bin(k, own);
+    turn(own, 0, cos, sin);
+    const next = cos * stepC - sin * stepS;
+    sin = cos * stepS + sin * stepC;
+    cos = next;
+    for (let c = 0; c < 4; c++) worst = Math.max(worst, Math.abs(valueAt(series[c]!, x) - own[c]![0]!));
   }
   if (to - from < FEW_BINS) for (let k = from; k <= to; k++) worst = Math.max(worst, missedAt(reader, k));
   return worst;

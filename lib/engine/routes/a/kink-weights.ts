@@ -1,5 +1,6 @@
 import { edgeRule } from '@/lib/engine/series/edge-weights';
 import type { BinRange } from './bin-weights';
+import { logNear } from './log-near';
 import { JUMP_TERMS, type NoiseWeigher } from './noise-weigher';
 
 const MOST_KINK_ORDER = 8;
@@ -46,7 +47,7 @@ interface Stencil {
  * Source: engine design (fractional end weights).
  */
 export function addKinks(values: Float64Array, weigher: NoiseWeigher, range: BinRange, first: number, last: number): void {
-  const { kinksHz, jumps } = weigher;
+  const { kinksHz } = weigher;
   const { dfHz } = range;
   for (let i = weigher.firstKinkAbove(range.fLowHz); i < kinksHz.length && kinksHz[i]! < range.fHighHz; i++) {
     const f = kinksHz[i]!;
@@ -62,30 +63,36 @@ export function addKinks(values: Float64Array, weigher: NoiseWeigher, range: Bin
     const at = inside + offset - first;
     const away = inside + offset - place;
     const size = (steepness + GROWTH) * step * Math.max(-away, away + most - 1);
-    if (most === 8 && offset === -4 && size < ALL_REACH) addEight(values, at, jumps, JUMP_TERMS * i, away, step, size < FEW_REACH);
-    else addOther(values, weigher, i, { at, away, most, step }, offset, size);
+    if (most === 8 && offset === -4) addEight(values, weigher, i, at, away, step, size);
+    else addOther(values, weigher, i, { at, away, most, step }, offset);
   }
 }
 
-/** The common case, with nothing looked up or allocated. */
-function addEight(values: Float64Array, at: number, jumps: Float64Array, from: number, away: number, step: number, isNear: boolean): void {
+/** The common case, with nothing looked up or allocated; three loops, so that each is compiled as one. */
+function addEight(values: Float64Array, weigher: NoiseWeigher, kink: number, at: number, away: number, step: number, size: number): void {
+  if (size < FEW_REACH) addByFew(values, weigher.jumps, JUMP_TERMS * kink, at, away, step);
+  else if (size < ALL_REACH) addByAll(values, weigher.jumps, JUMP_TERMS * kink, at, away, step);
+  else addSteep(values, weigher, kink, at, away, step);
+}
+
+function addByFew(values: Float64Array, jumps: Float64Array, from: number, at: number, away: number, step: number): void {
   const { powers } = EIGHT;
-  const back = -4 - away;
-  for (let j = 0; j < 8; j++) {
-    const x = (away + j) * step;
-    values[at + j]! += ofEight(powers, 9 * j, back) * (isNear ? few(jumps, from, x) : all(jumps, from, x));
-  }
+  for (let j = 0; j < 8; j++) values[at + j]! += ofEight(powers, 9 * j, -4 - away) * few(jumps, from, (away + j) * step);
+}
+
+function addByAll(values: Float64Array, jumps: Float64Array, from: number, at: number, away: number, step: number): void {
+  const { powers } = EIGHT;
+  for (let j = 0; j < 8; j++) values[at + j]! += ofEight(powers, 9 * j, -4 - away) * all(jumps, from, (away + j) * step);
+}
+
+function addSteep(values: Float64Array, weigher: NoiseWeigher, kink: number, at: number, away: number, step: number): void {
+  const { powers } = EIGHT;
+  for (let j = 0; j < 8; j++) values[at + j]! += ofEight(powers, 9 * j, -4 - away) * weigher.jumpAt(kink, logNear((away + j) * step));
 }
 
 const share = new Float64Array(MOST_KINK_ORDER);
 
-function addOther(values: Float64Array, weigher: NoiseWeigher, kink: number, { at, away, most, step }: Stencil, offset: number, size: number): void {
+function addOther(values: Float64Array, weigher: NoiseWeigher, kink: number, { at, away, most, step }: Stencil, offset: number): void {
   edgeRule(most, offset).weightsAt(away - offset, share);
-  const logKink = Math.log(weigher.kinksHz[kink]!);
-  for (let j = 0; j < most; j++) {
-    const x = (away + j) * step;
-    const logF = logKink + Math.log1p(x);
-    const jump = size < ALL_REACH ? all(weigher.jumps, JUMP_TERMS * kink, x) : weigher.continuedAt(kink, 1, logF) - weigher.continuedAt(kink, -1, logF);
-    values[at + j]! += share[j]! * jump;
-  }
+  for (let j = 0; j < most; j++) values[at + j]! += share[j]! * weigher.jumpAt(kink, logNear((away + j) * step));
 }

@@ -1,4 +1,5 @@
 import { chebyshevRule } from './chebyshev-rule';
+import { logNear } from './log-near';
 import type { NoiseWeigher } from './noise-weigher';
 
 /** Steps of a rule over one piece of a row: a piece changes 1/S by e^½ at most and is this part of the range at most. */
@@ -10,13 +11,14 @@ const NARROW = 1 / 16;
 const NARROW_POINTS = 8;
 
 /** Adds ∫ T_m(x) / S df over [from, to] to `sums`; x runs from −1 to 1 over the range of the moments. */
-function addPiece(sums: Float64Array, valueAt: (logF: number) => number, from: number, to: number, low: number, perHz: number): void {
+function addPiece(sums: Float64Array, weigher: NoiseWeigher, row: number, from: number, to: number, low: number, perHz: number): void {
   const { points, weights } = chebyshevRule((to - from) * perHz < 2 * NARROW ? NARROW_POINTS : POINTS);
   const [middle, half] = [(from + to) / 2, (to - from) / 2];
+  const logMiddle = Math.log(middle);
   for (let q = 0; q < points.length; q++) {
-    const f = middle + half * points[q]!;
-    const w = half * weights[q]! * valueAt(Math.log(f));
-    const x = (f - low) * perHz - 1;
+    const away = half * points[q]!;
+    const w = half * weights[q]! * weigher.continuedAt(row, -1, logMiddle + logNear(away / middle));
+    const x = (middle + away - low) * perHz - 1;
     let before = 1;
     let at = x;
     sums[0]! += w;
@@ -45,11 +47,10 @@ export function noiseMoments(weigher: NoiseWeigher, fromHz: number, toHz: number
   let i = weigher.firstKinkAbove(fromHz);
   for (let at = fromHz; at < toHz; i++) {
     const end = i < kinksHz.length ? Math.min(kinksHz[i]!, toHz) : toHz;
-    const row = i;
-    const valueAt = (logF: number): number => weigher.continuedAt(row, -1, logF);
-    const change = Math.abs(Math.log(valueAt(Math.log(end)) / valueAt(Math.log(at))));
-    const pieces = Math.max(1, Math.ceil(change / MOST_CHANGE) || 1, Math.ceil(((end - at) * perHz) / (2 * WIDE)));
-    for (let p = 0; p < pieces; p++) addPiece(sums, valueAt, at + ((end - at) * p) / pieces, at + ((end - at) * (p + 1)) / pieces, fromHz, perHz);
+    const steepness = kinksHz.length > 0 ? weigher.steepnessAt(Math.min(i, kinksHz.length - 1)) : weigher.steepness(at, end);
+    const change = (steepness * (end - at)) / at;
+    const pieces = Math.max(1, Math.ceil(change / MOST_CHANGE), Math.ceil(((end - at) * perHz) / (2 * WIDE)));
+    for (let p = 0; p < pieces; p++) addPiece(sums, weigher, i, at + ((end - at) * p) / pieces, at + ((end - at) * (p + 1)) / pieces, fromHz, perHz);
     at = end;
   }
   return atNodes(sums);

@@ -18,6 +18,8 @@ export interface NoiseWeigher {
   readonly steepnessAt: (index: number) => number;
   /** What 1/S gains where the law above a kink stands in for the one below it: powers 1 … JUMP_TERMS of f/f_kink − 1, kink after kink. */
   readonly jumps: Float64Array;
+  /** The same gain at ln(f/f_kink), whatever the steepness. */
+  readonly jumpAt: (index: number, y: number) => number;
   /** 1/S at ln f by the formula that holds just above (side +1) or below (side −1) kink `index`, continued. */
   readonly continuedAt: (index: number, side: 1 | -1, logF: number) => number;
   /** Index of the first kink above f; the formula at f is the one below that kink. */
@@ -164,6 +166,7 @@ function closedFormWeigher(curve: NoiseCurve, halvings: number): NoiseWeigher {
     fill,
     steepnessAt: () => 0,
     jumps: new Float64Array(0),
+    jumpAt: () => 0,
     continuedAt: (_index, _side, logF) => readTable(table, logF),
     firstKinkAbove: () => 0,
   };
@@ -245,6 +248,7 @@ function tableWeigher(curve: NoiseCurve, points: Float64Array): NoiseWeigher {
     fill,
     steepnessAt: (index) => steep[index]!,
     jumps,
+    jumpAt: (index, y) => inverse[index + 1]! * (expNearZero(-slope[index + 1]! * y) - expNearZero(-slope[index]! * y)),
     continuedAt: (index, side, logF) => inSegment(side > 0 ? index + 1 : index, logF),
     firstKinkAbove,
   };

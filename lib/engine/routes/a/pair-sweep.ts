@@ -189,7 +189,7 @@ export class PairSweep {
     let best = peak;
     const others = rivals(bracket, this.grid, heightOf(peak), distance + rise, this.standing.x + peak.delta);
     if (others === null) return null;
-    const heights = others.length > 0 ? lag.heights(this.ground.sight) : null;
+    const heights = others.length > 0 ? lag.heights(Math.max(...others.map((other) => Math.abs(peak.delta + other)))) : null;
     for (const other of others) {
       const delta = peak.delta + other;
       if (Math.abs(delta) > this.ground.sight) return null;

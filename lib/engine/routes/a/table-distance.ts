@@ -9,22 +9,23 @@ export interface CellMark {
   readonly norm: number;
 }
 
-/** ∫ of the power of each side over cells of ln k. */
+/** Power of each side over cells of ln k: each bin's, spread evenly over half a bin to either side, so that none is lost however the powers jump from bin to bin. */
 function cellPowers(reader: ColumnReader, logFirst: number, cells: number, scales: readonly [number, number]): { a: Float64Array; b: Float64Array } {
   const own = [new Float64Array(1), new Float64Array(1), new Float64Array(1), new Float64Array(1)] as const;
-  const powersAt = (place: number): [number, number] => {
-    reader.read(place, own, 0);
-    return [(own[DD][0]! + 2 * own[RE][0]! + own[BB][0]!) / scales[0] ** 2, own[BB][0]! / scales[1] ** 2];
-  };
   const [a, b] = [new Float64Array(cells), new Float64Array(cells)];
-  let before = powersAt(Math.exp(logFirst));
-  for (let c = 0; c < cells; c++) {
-    const [from, to] = [Math.exp(logFirst + c * CELL), Math.exp(logFirst + (c + 1) * CELL)];
-    const [middle, after] = [powersAt((from + to) / 2), powersAt(to)];
-    // The pair is a polynomial over far wider blocks.
-    const simpson = (s: 0 | 1): number => Math.max(0, ((to - from) * (before[s] + 4 * middle[s] + after[s])) / 6);
-    [a[c], b[c]] = [simpson(0), simpson(1)];
-    before = after;
+  let cell = 0;
+  for (let k = Math.round(Math.exp(logFirst)); k <= reader.last && cell < cells; k++) {
+    reader.bin(k, own);
+    const [powerA, powerB] = [Math.max(0, own[DD][0]! + 2 * own[RE][0]! + own[BB][0]!) / scales[0] ** 2, own[BB][0]! / scales[1] ** 2];
+    // A bin reaches over several cells where they are narrow; several bins lie in one where they are wide.
+    for (let from = k - 0.5; from < k + 0.5 && cell < cells;) {
+      const end = Math.exp(logFirst + (cell + 1) * CELL);
+      const to = Math.min(end, k + 0.5);
+      a[cell]! += (to - from) * powerA;
+      b[cell]! += (to - from) * powerB;
+      if (end <= k + 0.5) cell++;
+      from = to;
+    }
   }
   return { a, b };
 }
