@@ -49,7 +49,14 @@ export const routeBIndices = (n: number, worst: number, alone: readonly number[]
 /** Where the error bar is measured: every point up to five; of more, both ends, the worst and two between; every word. */
 export const errorBarIndices = (n: number, worst: number, alone: readonly number[] = []): number[] => chosen(n, alone, 5, 2, worst);
 
-/** The larger of the two measured neighbours; a point at a word is nobody's neighbour. */
+/**
+ * The larger of the two measured neighbours; a point at a word is nobody's neighbour.
+ * Shape:  one number a point; every point in `alone` is among the measured.
+ * Units:  those of what was measured.
+ * Error:  none: comparisons only.
+ * Fails:  never.
+ * Source: ours: an error bar changes slowly along a number, and nothing lies between words.
+ */
 export function fromNeighbours(n: number, measured: ReadonlyMap<number, number>, alone: readonly number[] = []): number[] {
   const indices = [...measured.keys()].filter((i) => !alone.includes(i)).sort((p, q) => p - q);
   return Array.from({ length: n }, (_, i) => {

@@ -37,9 +37,9 @@ export function horizonFigure({ scan }: RouteKit, request: PointRequest, { roots
       at: request.at,
       x: { label: 'redshift', unit: '', scale: 'log', values: x },
       series: [
-        line('signal-to-noise ratio', 'recomputed', x.map(heard)),
-        line('threshold', 'noise', x.map(() => threshold)),
-        { ...line(roots.length > 1 ? 'roots, the last of them the horizon' : 'horizon', 'noise', x.map((z) => (roots.includes(z) ? threshold : null))), points: true },
+        line(`${request.a.given.name}: signal-to-noise ratio`, 'recomputed', x.map(heard)),
+        line('threshold: signal-to-noise ratio', 'noise', x.map(() => threshold)),
+        { ...line(roots.length > 1 ? 'roots, the last the horizon: signal-to-noise ratio' : 'horizon: signal-to-noise ratio', 'noise', x.map((z) => (roots.includes(z) ? threshold : null))), points: true },
       ],
     },
   ];
