@@ -28,6 +28,7 @@ export interface IdentityMark {
 
 const mostNamed = 5;
 const handedOn = 'The file is given to referees, and with a record to everybody, as it was attached.';
+const blanked = 'In the copy that referees download this is blanked; with a record everybody gets the file as it was attached.';
 const fix = 'Attach the file without it, or answer that it may stay.';
 
 /** V29 for the attributes of an array file, one finding a file. */
@@ -62,7 +63,7 @@ export function identityFindings(file: string, comments: readonly CommentLine[])
       code: 'formats/hidden-identity',
       level: 'needs-answer',
       where: `${file}:${first.line}`,
-      text: `Header line ${first.line} of ${file} contains ${first.what}.${also} ${handedOn}`,
+      text: `Header line ${first.line} of ${file} contains ${first.what}.${also} ${blanked}`,
       fix,
     },
   ];

@@ -188,7 +188,7 @@ const numbered: readonly CatalogueRow[] = [
   },
   {
     code: 'formats/hidden-identity', numbers: ['V29'], part: 'files', levels: asks, concerns: 'all',
-    rule: 'A comment line of a text file, or an attribute in an HDF5 file, holds a path with somebody’s directory, an address of e-mail, or the name of a user, an author or a machine. The finding says where and does not repeat it.',
+    rule: 'A comment line of a text file, or an attribute in an HDF5 file, holds a path with somebody’s directory, an address of e-mail, or the name of a user, an author or a machine. The finding says where and does not repeat it. The copy of a text file that referees download has such comments blanked; attributes are not.',
     advice: 'Attach the file without it, or answer that it may stay.',
   },
   {

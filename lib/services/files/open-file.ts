@@ -8,11 +8,15 @@ import type { Actor } from '@/lib/policy/actor';
 import { NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { fittingView } from '@/lib/services/submissions/get-submission';
 import { fileStore } from './file-store';
+import { readsCopy, refereeCopy } from './referee-copy';
 
 export interface OpenFile {
   readonly name: string;
   readonly bytes: number;
+  /** Of what was attached, also where a copy is given. */
   readonly sha256: string;
+  /** A referee reads text with what says whose it is blanked in its comments. */
+  readonly isCopy: boolean;
   readonly open: () => Promise<Readable>;
 }
 
@@ -25,5 +29,7 @@ export async function openFile(actor: Actor, submissionId: string, fileId: strin
   const seen = uses.find((use) => use.lodged) ?? (facts.authorship ? uses[0] : undefined);
   if (!seen) return { ok: false, error: NOT_FOUND };
   const { name, bytes, sha256, storageKey } = seen;
-  return ok({ name, bytes, sha256, open: () => fileStore().get(storageKey) });
+  const original = (): Promise<Readable> => fileStore().get(storageKey);
+  const isCopy = view === 'review' && readsCopy(facts);
+  return ok({ name, bytes, sha256, isCopy, open: isCopy ? async () => refereeCopy(await original()) : original });
 }
