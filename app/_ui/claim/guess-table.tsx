@@ -11,9 +11,9 @@ function Row({ guess, state, answer }: AnsweredGuess) {
   const { about, part, name, proposed, agrees, reason, confidence, convention } = guess;
   return (
     <tr>
-      <th scope="row">{topicWords[about]}<span className="block text-small font-normal text-ink-2">{part === 'noise' ? 'noise curve' : 'waveform'} {name}{convention && <>, <Link href={conventionHref(convention.id)}>{convention.id}</Link></>}</span></th>
-      <td className="[overflow-wrap:anywhere]">{inUse(guess)}</td>
-      <td className="[overflow-wrap:anywhere]">{agrees ? 'the same' : proposed}<span className="block text-small text-ink-2">{reason}</span></td>
+      <th scope="row">{topicWords[about]}<span className="block text-small font-normal text-ink-2">{part === 'noise' ? 'noise curve' : 'waveform'} {name}{convention && <>, <Link href={conventionHref(convention.id)} className="inline-flex min-h-8 min-w-8 items-center font-code text-code">{convention.id}</Link></>}</span></th>
+      <td><span className="block min-w-[20ch] [overflow-wrap:anywhere]">{inUse(guess)}</span></td>
+      <td><div className="min-w-[36ch] [overflow-wrap:anywhere]">{agrees ? 'the same' : proposed}<span className="block text-small text-ink-2">{reason}</span></div></td>
       <td>{confidenceWords(confidence)}</td>
       <td>{stateWords[state]}{answer && <span className="block text-small text-ink-2">{answer}</span>}</td>
     </tr>
