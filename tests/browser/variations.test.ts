@@ -99,7 +99,7 @@ describe('the author, on a draft', { timeout: 300_000 }, () => {
     await form(page, 'C1').getByText('a number above 0').waitFor();
     await page.goto(`${app.url}/compose/${id}?vary=C1&settings=${encodeURIComponent('{"fLowHz":30}')}&mask=0.2,0.3`);
     expect(await form(page, 'C1').getByLabel('fLowHz, Hz').inputValue()).toBe('30');
-    expect(await form(page, 'C1').getByLabel('Leave out from').inputValue()).toBe('0.2');
+    expect(await form(page, 'C1').getByLabel('From', { exact: true }).inputValue()).toBe('0.2');
     await form(page, 'C1').getByText('declared 10 Hz').waitFor();
   });
 

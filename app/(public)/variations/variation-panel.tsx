@@ -36,7 +36,7 @@ export function VariationPanel({ source, own, left, asked }: PanelProps) {
   return (
     <Disclosure summary="Vary it" open={own.length > 0 || asked !== null}>
       <div className="grid grid-cols-1 gap-4 rounded border border-dashed border-control px-4 py-3">
-        <p className="text-ui text-ink-2">A variation of {source.claimId} is seen by you alone until you attach it to a comment or, on a record, open it by its link. The official number never changes. {left} left today.</p>
+        <p className="text-ui text-ink-2">{source.isDraft ? `A variation of ${source.claimId} in a draft is seen by you alone. The checked number never changes.` : `A variation of ${source.claimId} is seen by you alone until you attach it to a comment or, on a record, open it by its link. The official number never changes.`} {left} left today.</p>
         {left > 0 ? <VariationForm source={source} asked={asked} /> : <p className="text-ui">Those of today are used up: each counts for 24 hours. Yours below stay, and so do their addresses.</p>}
         {own.length > 0 && <Saved source={source} own={own} now={now} />}
       </div>
@@ -50,7 +50,7 @@ function Saved({ source, own, now }: { readonly source: VariationSource; readonl
     <Table caption={`Your variations of ${source.claimId}`}>
       <thead><tr><th scope="col">Changed</th><th scope="col">Result</th><th scope="col">Seen by</th></tr></thead>
       <tbody>
-        {source.points.length === 1 && only && <tr><th scope="row" className="font-normal!">nothing: the official number</th><td>{formatWithUncertainty(only.value, only.expandedUncertainty, source.unit)}</td><td /></tr>}
+        {source.points.length === 1 && only && <tr><th scope="row" className="font-normal!">nothing: the {source.isDraft ? 'checked' : 'official'} number</th><td>{formatWithUncertainty(only.value, only.expandedUncertainty, source.unit)}</td><td /></tr>}
         {own.map((v) => (
           <tr key={v.id}>
             <th scope="row" className="font-normal!">

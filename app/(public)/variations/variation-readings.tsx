@@ -66,17 +66,17 @@ function Chosen({ id, reading, onLeave }: { readonly id: string; readonly readin
 }
 
 /** A stretch of the records that does not count: a burst at the start, a glitch. */
-export function MaskFields({ source, fields, onFields }: PartProps) {
+export function MaskFields({ fields, onFields }: PartProps) {
   const of = (end: 'from' | 'to') => ({
     value: fields.mask[end], inputMode: 'decimal' as const, autoComplete: 'off',
     onChange: (e: { readonly target: { readonly value: string } }) => onFields({ ...fields, mask: { ...fields.mask, [end]: e.target.value } }),
   });
   return (
     <fieldset className="grid content-start gap-1">
-      <legend className="sr-only">A stretch of time to leave out of {source.claimId}</legend>
+      <legend className="mb-1 text-ui font-semibold">Leave out a stretch of time</legend>
       <div className="grid grid-cols-2 gap-3">
-        <TextField label="Leave out from" {...of('from')} />
-        <TextField label="until" {...of('to')} />
+        <TextField label="From" {...of('from')} />
+        <TextField label="Until" {...of('to')} />
       </div>
       <p className="text-small text-ink-2">In the files’ own time; set to zero, with edges of a tenth of the stretch.</p>
     </fieldset>

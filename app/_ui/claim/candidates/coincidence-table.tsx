@@ -12,11 +12,11 @@ export function CoincidenceTable({ claim }: { readonly claim: ResultClaim }) {
   return (
     <Disclosure summary={`Fits that may be coincidence (${rows.length})`}>
       <Table caption={`Readings under which ${claim.id} would agree, each as likely to be chance`}>
-        <thead><tr><th scope="col">Would agree if</th><th scope="col" className="num">Chance does as well</th><th scope="col" className="num">Readings tried</th><th scope="col">Other claims</th></tr></thead>
+        <thead><tr><th scope="col">Would agree if</th><th scope="col" className="num whitespace-normal!">Chance does as well</th><th scope="col" className="num whitespace-normal!">Readings tried</th><th scope="col">Other claims</th></tr></thead>
         <tbody>
           {rows.map((row) => (
             <tr key={row.id}>
-              <th scope="row" className="font-normal!">{row.readings.map(({ clause }) => clause).join('; or ')}</th>
+              <th scope="row" className="min-w-[14ch] font-normal!">{row.readings.map(({ clause }) => clause).join('; or ')}</th>
               <td className="num">{percent(row.chance)}</td>
               <td className="num">{row.tried}</td>
               <td>{row.breaks.length > 0 ? `would part ${row.breaks.join(', ')}` : row.explains.length > 0 ? `also ${row.explains.join(', ')}` : '—'}</td>
