@@ -26,7 +26,8 @@ function quoted({ where, text }: Written, from: number, length: number): string 
   const [start, end] = [Math.max(0, from - AROUND), Math.min(text.length, from + length + AROUND)];
   // A formula cut in the middle is no words.
   const words = text.slice(start, end).replace(/\${1,2}[^$]*(?:\${1,2}|$)/g, '…').replace(/\s+/g, ' ').trim();
-  return `${where}: “${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}”`;
+  const passage = `${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}`;
+  return `${where}: “${passage.replace(/…(?:\s*…)+/g, '…')}”`;
 }
 
 /** Heads of files before the statement. */

@@ -17,7 +17,7 @@ export function TriedTable({ claim }: { readonly claim: ResultClaim }) {
   const asked = claim.points.flatMap(({ at }, index) => (rows.some(({ values }) => typeof values?.[index] === 'number') ? [{ at, index }] : []));
   return (
     <Disclosure summary={`All single readings tried (${rows.length})`}>
-      <p className="mb-2 text-small text-ink-2">By route A alone{claim.unit !== '' && `, in ${unitText(claim.unit)}`}; <i>U</i> as beside the recomputed number.{pairs > 0 && ` The ${pairs} pairs stand in the result.`}</p>
+      <p className="mb-2 text-small text-ink-2">By route A alone{claim.unit !== '' && `, in ${unitText(claim.unit)}`}; <i>U</i> as beside the recomputed number.{pairs > 0 && ` The ${pairs === 1 ? 'pair stands' : `${pairs} pairs stand`} in the result.`}</p>
       <Table caption={`Single readings of ${claim.id} with the number that each gives`}>
         <thead><tr><th scope="col">If</th>{asked.map(({ at, index }) => <th key={index} scope="col" className="num">{formatAt(at) || 'The number'}</th>)}</tr></thead>
         <tbody>
