@@ -16,6 +16,12 @@ export interface Panel {
 
 export const isBand = (series: FigureSeries) => series.role === 'band-low' || series.role === 'band-high';
 
+/** Errors are of a sweep alone; a band of any other figure says between what it lies. */
+export function bandWords(figure: Figure): string {
+  if (figure.kind === 'sweep') return figure.x.words ? 'error bar' : 'error band';
+  return (['band-low', 'band-high'] as const).map((role) => figure.series.find((s) => s.role === role)?.label ?? '').join(' – ');
+}
+
 /** What must not share an axis: two units on one plot would invite a wrong reading. */
 const groupKey = (series: FigureSeries) => (series.role === 'residual' ? 'residual' : `${series.axis} ${series.scale} ${series.unit}`);
 

@@ -5,7 +5,7 @@ import { UnitLabel } from '../math/unit-label';
 import { acrossEnds, acrossScale } from './axis-scale';
 import { nearestIndex, useCursorLink } from './cursor-link';
 import { PanelMount } from './panel-mount';
-import { cursorGroup, dashOf, drawnAsPoints, drawnFull, panelsOf } from './panels';
+import { bandWords, cursorGroup, dashOf, drawnAsPoints, drawnFull, panelsOf } from './panels';
 import { colourOf } from './plot-options';
 import { PlotTools } from './plot-tools';
 import { readoutOf, steppedIndex } from './readout';
@@ -28,7 +28,7 @@ function Key({ figure }: { readonly figure: Figure }) {
           {s.label}{s.unit && <>, <UnitLabel unit={s.unit} /></>}
         </span>
       ))}
-      {hasBand && <span className="whitespace-nowrap"><svg viewBox="0 0 24 8" aria-hidden="true" className="mr-1.5 inline-block h-2 w-6">{figure.x.words ? <path d="M12 0V8" stroke="var(--trace-recomputed)" strokeWidth="1.6" /> : <rect width="24" height="8" fill="var(--band)" />}</svg>{figure.x.words ? 'error bar' : 'error band'}</span>}
+      {hasBand && <span className="whitespace-nowrap"><svg viewBox="0 0 24 8" aria-hidden="true" className="mr-1.5 inline-block h-2 w-6">{figure.x.words ? <path d="M12 0V8" stroke="var(--trace-recomputed)" strokeWidth="1.6" /> : <rect width="24" height="8" fill="var(--band)" />}</svg>{bandWords(figure)}</span>}
     </span>
   );
 }

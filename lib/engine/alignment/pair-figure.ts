@@ -3,6 +3,7 @@ import { toneName } from '../tones/tone';
 import type { PairPoint, PairResult } from './pair-point';
 
 const MOST_POINTS = 1200;
+const PHASE = 'phase difference, δφ';
 /** Amplitudes below this share of the largest say nothing of a phase. */
 const AUDIBLE = 1e-3;
 
@@ -25,8 +26,8 @@ export function pairFigure({ a, b, mode, routes, settings }: PairPoint, { aligne
     title: `${b.waveform.name} less ${a.waveform.name} after the alignment: ${toneName({ mode })}`,
     x: { label: `Time of ${a.waveform.name}`, unit: 'M', scale: 'linear', values: picked.map((i) => t[i]!) },
     series: [
-      { label: 'Phase difference', unit: 'rad', role: 'recomputed', axis: 'left', scale: 'linear', values: shown((i) => phase[i]! - aligned.phaseShift) },
-      ...(settings.alignment === 'window' ? [{ label: 'Alignment window', unit: 'rad', role: 'claimed', axis: 'left', scale: 'linear', values: inside } as const] : []),
+      { label: 'Phase difference', quantity: PHASE, unit: 'rad', role: 'recomputed', axis: 'left', scale: 'linear', values: shown((i) => phase[i]! - aligned.phaseShift) },
+      ...(settings.alignment === 'window' ? [{ label: 'Alignment window', quantity: PHASE, unit: 'rad', role: 'claimed', axis: 'left', scale: 'linear', values: inside } as const] : []),
       { label: 'Relative amplitude difference', unit: '', role: 'recomputed', axis: 'right', scale: 'linear', values: shown((i) => ratio[i]! - 1) },
     ],
   };

@@ -57,6 +57,8 @@ export interface FigurePlane {
 }
 export interface FigureSeries {
   readonly label: string;
+  /** What its axis is of, where the label names the trace rather than the quantity. */
+  readonly quantity?: string;
   readonly unit: string;
   /** Claimed traces are solid orange, recomputed dashed blue; bands are drawn filled. `varied` is drawn over them, and no run makes it. */
   readonly role: 'claimed' | 'recomputed' | 'varied' | 'residual' | 'noise' | 'band-low' | 'band-high';

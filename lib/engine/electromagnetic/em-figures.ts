@@ -49,7 +49,7 @@ export function bothFluxesFigure(em: EmPoint, gw: SampledRadiation, names: reado
   const [topEm, topGw] = [light.reduce((a, b) => Math.max(a, b), 0), waves.reduce((a, b) => Math.max(a, b), 0)];
   const stride = Math.max(1, Math.ceil(axis.length / MOST_POINTS));
   const picked = Array.from(axis.keys()).filter((i) => i % stride === 0 && axis[i]! >= em.source.startM);
-  const drawn = { unit: 'of its peak', axis: 'left', scale: 'log' } as const;
+  const drawn = { quantity: 'power', unit: 'of its peak', axis: 'left', scale: 'log' } as const;
   return {
     kind: 'waveforms',
     title: `Electromagnetic waves of ${names[0]} and gravitational ones of ${names[1]}, each over its peak`,

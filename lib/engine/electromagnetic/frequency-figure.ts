@@ -23,7 +23,7 @@ export function frequencyFigure(point: FrequencyPoint, valueHz: number): Figure 
   const stride = Math.max(1, Math.ceil(axis.length / MOST_POINTS));
   const picked = Array.from(axis.keys()).filter((i) => i % stride === 0);
   const hz = hzPerOmega(point.totalMassMsun);
-  const drawn = { unit: 'Hz', axis: 'left', scale: 'log' } as const;
+  const drawn = { quantity: 'frequency f', unit: 'Hz', axis: 'left', scale: 'log' } as const;
   const flat = (value: number): number[] => picked.map(() => value);
   return {
     kind: 'curve',

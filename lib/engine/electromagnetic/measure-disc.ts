@@ -41,7 +41,7 @@ function rowsOf({ declared, totalMassMsun }: DiscPoint): UsedRow[] {
 function figureOf({ waveform, curve, peak, totalMassMsun, declared }: DiscPoint): Figure {
   const stride = Math.max(1, Math.ceil(curve.axis.length / MOST_POINTS));
   const picked = Array.from(curve.axis.keys()).filter((i) => i % stride === 0);
-  const drawn = { unit: 'erg/s', axis: 'left', scale: 'log' } as const;
+  const drawn = { quantity: 'luminosity L', unit: 'erg/s', axis: 'left', scale: 'log' } as const;
   const flat = (value: number): number[] => picked.map(() => value);
   const accreted = accretionErgPerS(declared);
   return {

@@ -104,7 +104,7 @@ function massesDiffer({ runs }: SeriesPoint): Finding[] {
 function figureOf(point: SeriesPoint): Figure {
   const logs = byA(point).sort((p, q) => p.field - q.field);
   const residuals = residualsOf(logs, slopeAboutMeans(logs));
-  const drawn = { unit: 'M', axis: 'left', scale: 'log' } as const;
+  const drawn = { quantity: 'electromagnetic energy', unit: 'M', axis: 'left', scale: 'log' } as const;
   return {
     kind: 'sweep',
     title: 'Electromagnetic energy against the field',

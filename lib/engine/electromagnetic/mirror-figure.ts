@@ -30,7 +30,7 @@ export function mirrorFigure(point: MirrorPoint, { from, to, shiftM, peakM }: Mi
     return [re[0]!, im[0]!];
   });
   const left = (i: number, at: readonly [number, number]): number => Math.atan2(at[1] * shown.re[i]! - at[0] * shown.im[i]!, at[0] * shown.re[i]! + at[1] * shown.im[i]!);
-  const drawn = { unit: '', axis: 'left', scale: 'log' } as const;
+  const drawn = { quantity: 'amplitude, |ψ₄|', unit: '', axis: 'left', scale: 'log' } as const;
   return {
     kind: 'waveforms',
     title: `Amplitudes of ${toneName(point)}: ${gwWaveform.name}, and ${emWaveform.name} over ${scientific(meanRatio, 3)}`,

@@ -112,7 +112,7 @@ function carried({ request, leader, meter, observable, unit, title, formalOrder,
       used: { settings: [...own.settings, ...last.settings], assumed: [...own.assumed, ...last.assumed] },
       figures: () => [
         approachFigure({
-          title: `${title} against the grid spacing, and its limit`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit,
+          title: `${title} against the grid spacing, and its limit`, quantity: title, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit,
           law: (h) => value + (finest - value) * (h / hFinest) ** order, lawName: `Limit plus a power ${short(order, 3)} of the spacing`, claimed: request.claimed[0] ?? null,
         }),
       ],

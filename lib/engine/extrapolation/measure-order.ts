@@ -162,7 +162,7 @@ function ofScalars(spaced: SpacedRuns, observable: Observable, scalars: Scalars,
       used: { settings: [...own.settings, ...last.settings], assumed: [...own.assumed, ...last.assumed] },
       figures: () => [
         approachFigure({
-          title: `${titleOf(observable, scalars)} against the grid spacing`, x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit,
+          title: `${titleOf(observable, scalars)} against the grid spacing`, quantity: titleOf(observable, scalars), x: { label: 'Grid spacing', unit: 'M' }, places: spacings, values, unit,
           law: (h) => limit + (values[2] - limit) * (h / spacings[2]) ** order, lawName: `Limit plus a power ${short(order, 3)} of the spacing`, claimed: null,
         }),
       ],

@@ -133,7 +133,7 @@ function fitted(given: Fitted): Measurement {
         const law = (x: number): number => c.reduceRight((sum, coefficient) => sum * radii[0]! * x + coefficient, 0);
         return [
           approachFigure({
-            title: `${title} against the inverse radius, and its limit`, x: { label: 'Inverse radius', unit: '1/M' }, places: radii.map((r) => 1 / r), values, unit,
+            title: `${title} against the inverse radius, and its limit`, quantity: title, x: { label: 'Inverse radius', unit: '1/M' }, places: radii.map((r) => 1 / r), values, unit,
             law, lawName: `Polynomial of degree ${degree} in 1/r`, claimed: request.claimed[0] ?? null,
           }),
         ];

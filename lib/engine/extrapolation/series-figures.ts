@@ -6,6 +6,7 @@ const MOST_POINTS = 1200;
 const drawn = { axis: 'left', scale: 'linear' } as const;
 
 export const curveUnit: Readonly<Record<Curve, string>> = { phase: 'rad', amplitude: '', complex: '' };
+const curveSymbol: Readonly<Record<Curve, string>> = { phase: 'phase difference, δφ', amplitude: 'amplitude difference, δ|H|', complex: 'complex difference, |δH|' };
 export const curveNoun: Readonly<Record<Curve, string>> = { phase: 'Phase difference', amplitude: 'Amplitude difference', complex: 'Size of the complex difference' };
 
 interface Drawn {
@@ -33,28 +34,30 @@ export function convergenceFigures({ curves, curve, spacings, names: [c, m, f], 
   const stride = Math.max(1, Math.ceil(curves.t.length / MOST_POINTS));
   const picked = Array.from(curves.t.keys()).filter((i) => i % stride === 0);
   const [coarse, fine] = curves[curve];
-  const unit = curveUnit[curve];
+  const [unit, quantity] = [curveUnit[curve], curveSymbol[curve]];
   const scaled = (by: number): number[] => picked.map((i) => fine[i]! * predictedRatio(by, spacings));
   const x = { label: 'Time', unit: 'M', scale: 'linear', values: picked.map((i) => curves.t[i]!) } as const;
-  const asClaimed: FigureSeries[] = claimed === null || !(claimed > 0) ? [] : [{ ...drawn, label: `${m} less ${f}, × ${spelt(predictedRatio(claimed, spacings))} (order ${spelt(claimed)}, claimed)`, unit, role: 'claimed', values: scaled(claimed) }];
-  const constant: FigureSeries[] = claimed === null ? [] : [{ ...drawn, label: 'Claimed order', unit: '', role: 'claimed', values: picked.map(() => claimed) }];
+  const asClaimed: FigureSeries[] = claimed === null || !(claimed > 0) ? [] : [{ ...drawn, label: `${m} less ${f}, × ${spelt(predictedRatio(claimed, spacings))} (order ${spelt(claimed)}, claimed)`, quantity, unit, role: 'claimed', values: scaled(claimed) }];
+  const constant: FigureSeries[] = claimed === null ? [] : [{ ...drawn, label: 'Claimed order', quantity: 'order p', unit: '', role: 'claimed', values: picked.map(() => claimed) }];
   return [
     {
       kind: 'curve',
       title: `${curveNoun[curve]} between neighbouring runs, scaled to one another`,
       x,
       series: [
-        { ...drawn, label: `${c} less ${m}`, unit, role: 'noise', values: picked.map((i) => coarse[i]!) },
-        { ...drawn, label: `${m} less ${f}, × ${spelt(predictedRatio(order, spacings))} (order ${spelt(order)})`, unit, role: 'recomputed', values: scaled(order) },
+        { ...drawn, label: `${c} less ${m}`, quantity, unit, role: 'noise', values: picked.map((i) => coarse[i]!) },
+        { ...drawn, label: `${m} less ${f}, × ${spelt(predictedRatio(order, spacings))} (order ${spelt(order)})`, quantity, unit, role: 'recomputed', values: scaled(order) },
         ...asClaimed,
       ],
     },
-    { kind: 'curve', title: 'Order of convergence at each time by itself', x, series: [{ ...drawn, label: 'Order', unit: '', role: 'recomputed', values: picked.map((i) => pointwise[i] ?? null) }, ...constant] },
+    { kind: 'curve', title: 'Order of convergence at each time by itself', x, series: [{ ...drawn, label: 'Order', quantity: 'order p', unit: '', role: 'recomputed', values: picked.map((i) => pointwise[i] ?? null) }, ...constant] },
   ];
 }
 
 interface Approach {
   readonly title: string;
+  /** What the numbers are of. */
+  readonly quantity: string;
   readonly x: { readonly label: string; readonly unit: string };
   /** Where the runs stand on the axis of the figure, and their numbers. */
   readonly places: readonly number[];
@@ -87,17 +90,17 @@ function joined(places: readonly number[], values: readonly number[], x: number)
  * Fails:  never.
  * Source: Q20, Q21.
  */
-export function approachFigure({ title, x, places, values, unit, law, lawName, claimed }: Approach): Figure {
+export function approachFigure({ title, quantity, x, places, values, unit, law, lawName, claimed }: Approach): Figure {
   const last = Math.max(...places);
   const grid = [...new Set([...Array.from({ length: POINTS + 1 }, (_, i) => (last * i) / POINTS), ...places])].sort((p, q) => p - q);
-  const asClaimed: FigureSeries[] = claimed === null ? [] : [{ ...drawn, label: 'Claimed', unit, role: 'claimed', values: grid.map(() => claimed) }];
+  const asClaimed: FigureSeries[] = claimed === null ? [] : [{ ...drawn, label: 'Claimed', quantity, unit, role: 'claimed', values: grid.map(() => claimed) }];
   return {
     kind: 'curve',
     title,
     x: { ...x, scale: 'linear', values: grid },
     series: [
-      { ...drawn, label: 'Of each run, joined', unit, role: 'noise', values: grid.map((at) => joined(places, values, at)) },
-      { ...drawn, label: lawName, unit, role: 'recomputed', values: grid.map(law) },
+      { ...drawn, label: 'Of each run, joined', quantity, unit, role: 'noise', values: grid.map((at) => joined(places, values, at)) },
+      { ...drawn, label: lawName, quantity, unit, role: 'recomputed', values: grid.map(law) },
       ...asClaimed,
     ],
   };

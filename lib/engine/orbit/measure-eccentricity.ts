@@ -87,7 +87,7 @@ function figureOf(point: OrbitPoint): Figure {
   const inside = Array.from(t.keys()).filter((i) => w[i] !== 0);
   const stride = Math.max(1, Math.ceil(inside.length / MOST_POINTS));
   const picked = inside.filter((_, k) => k % stride === 0);
-  const line = { axis: 'left', scale: 'linear', unit: 'rad/M' } as const;
+  const line = { quantity: 'frequency ω', axis: 'left', scale: 'linear', unit: 'rad/M' } as const;
   return {
     kind: 'curve',
     title: `Frequency of ${toneName(point)} of ${point.waveform.name}, its smooth part and what is left`,

@@ -42,13 +42,14 @@ export function fitFigure({ observable, fit, binary }: FitPoint): Figure {
   const { name, unit } = fitWords[observable];
   const isBand = (readings: readonly FitReading[]): boolean => readings.filter(({ isEstimate }) => !isEstimate).length > 1;
   const banded = isBand(rows[0]!);
+  const quantity = banded ? `${name}, less the mean of the fits` : name;
   const shown = (value: number, readings: readonly FitReading[]): number => (banded ? value - meanOf(readings) : value);
   const lines = rows[0]!.map(({ name: group }): FigureSeries => ({
-    ...drawn, label: group, unit, role: 'recomputed',
+    ...drawn, label: group, quantity, unit, role: 'recomputed',
     values: rows.map((readings) => shown(readings.find((reading) => reading.name === group)!.value, readings)),
   }));
   const edge = (which: 0 | 1): readonly number[] => rows.map((readings) => shown(bandOf(readings)[which], readings));
-  const band: FigureSeries[] = banded ? [{ ...drawn, label: 'Lowest of the fits', unit, role: 'band-low', values: edge(0) }, { ...drawn, label: 'Highest of the fits', unit, role: 'band-high', values: edge(1) }] : [];
+  const band: FigureSeries[] = banded ? [{ ...drawn, label: 'Lowest of the fits', quantity, unit, role: 'band-low', values: edge(0) }, { ...drawn, label: 'Highest of the fits', quantity, unit, role: 'band-high', values: edge(1) }] : [];
   return {
     kind: 'curve',
     title: banded ? `${name} by each published fit, less their mean, at spins ${binary.chi1z} and ${binary.chi2z}` : `${name} by ${lines[0]!.label} at spins ${binary.chi1z} and ${binary.chi2z}`,

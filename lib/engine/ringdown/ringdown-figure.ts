@@ -7,6 +7,7 @@ import type { FitWindow } from './ringdown-point';
 /** Shown on either side of the window. */
 const AROUND_M = 25;
 const MOST_POINTS = 1200;
+const AMPLITUDE = 'amplitude, r|h|/M';
 
 /** Means of phase and ln|H| over the window: where the two lines cross its middle. */
 function middles(tone: Tone, { from, to }: FitWindow): { readonly level: number; readonly angle: number } {
@@ -46,8 +47,8 @@ export function ringdownFigure(tone: Tone, window: FitWindow, { omega, gamma }: 
     title,
     x: { label: 'Time from the peak', unit: 'M', scale: 'linear', values: picked.map((i) => shown.axis[i]! - peakM) },
     series: [
-      { label: 'Amplitude in the file', unit: '', role: 'claimed', axis: 'left', scale: 'log', values: picked.map((i) => amplitude[i]!) },
-      { label: 'Fitted decay', unit: '', role: 'recomputed', axis: 'left', scale: 'log', values: picked.map((i) => (inside(i) ? Math.exp(level - gamma * (shown.axis[i]! - middle)) : null)) },
+      { label: 'Amplitude in the file', quantity: AMPLITUDE, unit: '', role: 'claimed', axis: 'left', scale: 'log', values: picked.map((i) => amplitude[i]!) },
+      { label: 'Fitted decay', quantity: AMPLITUDE, unit: '', role: 'recomputed', axis: 'left', scale: 'log', values: picked.map((i) => (inside(i) ? Math.exp(level - gamma * (shown.axis[i]! - middle)) : null)) },
       { label: 'Phase less the fitted line', unit: 'rad', role: 'residual', axis: 'right', scale: 'linear', values: picked.map((i) => (inside(i) ? left(i) : null)) },
     ],
   };

@@ -30,6 +30,18 @@ describe('a figure saved as SVG', () => {
     expect(words.join(' ')).toContain('Counterfoil record 90tf-w8a1, revision 2, https://counterfoil.example/records/90tf-w8a1; claim C1, Match of A and B, the point furthest from its claim.');
     expect(wordsIn(svgOf(figure('sweep')))).toEqual(expect.arrayContaining(['Match of A and B over total mass', 'Total mass [M⊙]', 'Match of A and B', 'error band, ± U']));
   });
+  it('says what its vertical axis is of where each trace has a name of its own', () => {
+    const trace = { unit: 'rad', axis: 'left', scale: 'linear', values: [1, 2] } as const;
+    const named: Figure = { kind: 'curve', title: 'Runs', x: { label: 'Time', unit: 'M', scale: 'linear', values: [0, 1] }, series: [{ ...trace, label: 'low less medium', role: 'noise', quantity: 'phase difference' }, { ...trace, label: 'medium less high', role: 'recomputed', quantity: 'phase difference' }] };
+    expect(wordsIn(svgOf(named))).toContain('phase difference [rad]');
+    expect(wordsIn(svgOf({ ...named, series: named.series.map((s, i) => (i === 0 ? s : { ...s, quantity: 'phase' })) }))).not.toContain('phase difference [rad]');
+  });
+  it('calls a band U where it is one, and by its edges elsewhere', () => {
+    const edge = { unit: '', axis: 'left', scale: 'linear', values: [1, 2] } as const;
+    const fits: Figure = { kind: 'curve', title: 'Fits', x: { label: 'Mass ratio', unit: '', scale: 'linear', values: [1, 2] }, series: [{ ...edge, label: 'Lowest', role: 'band-low' }, { ...edge, label: 'Highest', role: 'band-high' }, { ...edge, label: 'Mean', role: 'recomputed' }] };
+    expect(wordsIn(svgOf(fits))).toContain('Lowest – Highest');
+    expect(wordsIn(svgOf(fits)).join()).not.toContain('± U');
+  });
   it('prints ticks on both axes, on round places', () => {
     const words = wordsIn(svgOf(figure('sweep')));
     expect(words).toEqual(expect.arrayContaining(['50', '100', '150', '200']));

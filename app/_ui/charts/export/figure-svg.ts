@@ -1,7 +1,7 @@
 import type { Figure, FigureSeries } from '@/lib/engine/contract/measurement';
 import { light } from '../../tokens';
 import { acrossEnds, acrossScale, axisScale } from '../axis-scale';
-import { isBand, panelsOf, type Panel } from '../panels';
+import { bandWords, isBand, panelsOf, type Panel } from '../panels';
 import { axisTicks } from './axis-ticks';
 import { pointWords, titleOf, xLabel, yLabel, type FigureOrigin } from './figure-words';
 import { extentOf, type Extent, type Frame } from './frame';
@@ -96,7 +96,7 @@ function legend(figure: Figure, top: number): Placed {
   const lines = figure.series.filter((s) => !isBand(s));
   const entries = lines.map((series) => ({ words: series.label, style: traceStyle(figure, series) }));
   const hasBand = figure.series.some((s) => s.role === 'band-high');
-  const cells = [...entries.map(({ words, style }) => ({ words, sample: (x: number, y: number) => (style.points ? `<circle cx="${x + 16}" cy="${y - 4}" r="4" fill="${style.full ? style.colour : light.sheet}" stroke="${style.colour}" stroke-width="1.8"/>` : `<path d="M${x} ${y - 4}H${x + 32}" fill="none" stroke="${style.colour}" stroke-width="${style.width}"${style.dash ? ` stroke-dasharray="${style.dash}"` : ''}/>`) })), ...(hasBand ? [{ words: figure.x.words ? 'error bar, ± U' : 'error band, ± U', sample: (x: number, y: number) => figure.x.words ? `<path d="M${x + 16} ${y - 10}V${y + 2}" stroke="${light['trace-recomputed']}" stroke-width="1.8"/>` : `<rect x="${x}" y="${y - 9}" width="32" height="10" fill="${light['trace-recomputed']}" fill-opacity="0.2"/>` }] : [])];
+  const cells = [...entries.map(({ words, style }) => ({ words, sample: (x: number, y: number) => (style.points ? `<circle cx="${x + 16}" cy="${y - 4}" r="4" fill="${style.full ? style.colour : light.sheet}" stroke="${style.colour}" stroke-width="1.8"/>` : `<path d="M${x} ${y - 4}H${x + 32}" fill="none" stroke="${style.colour}" stroke-width="${style.width}"${style.dash ? ` stroke-dasharray="${style.dash}"` : ''}/>`) })), ...(hasBand ? [{ words: figure.kind === 'sweep' ? `${bandWords(figure)}, ± U` : bandWords(figure), sample: (x: number, y: number) => figure.x.words ? `<path d="M${x + 16} ${y - 10}V${y + 2}" stroke="${light['trace-recomputed']}" stroke-width="1.8"/>` : `<rect x="${x}" y="${y - 9}" width="32" height="10" fill="${light['trace-recomputed']}" fill-opacity="0.2"/>` }] : [])];
   const half = (WIDTH - LEFT - RIGHT) / 2;
   const marks = cells.map(({ words, sample }, i) => {
     const x = LEFT + (i % 2) * half;

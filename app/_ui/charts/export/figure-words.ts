@@ -24,6 +24,8 @@ export const xLabel = ({ kind, x }: Figure): string => withUnit(kind === 'sweep'
 export const titleOf = (figure: Figure, origin: FigureOrigin): string =>
   figure.kind === 'sweep' ? `${origin.quantity} over ${lowered(settingLabel(figure.x.label))}` : figure.title;
 
+const theOnly = (names: readonly (string | undefined)[]): string | null => (new Set(names).size === 1 ? (names[0] ?? null) : null);
+
 /** Labels such as `A: dρ²/d ln f` name one quantity for several traces. */
 const shared = (labels: readonly string[]): string | null => {
   const ends = new Set(labels.map((label) => label.split(': ')[1] ?? ''));
@@ -31,13 +33,14 @@ const shared = (labels: readonly string[]): string | null => {
   return ends.size === 1 && end !== '' ? end : null;
 };
 
-/** What the vertical axis is of: one trace's own name, what several share, or the claim's quantity. */
+/** What the vertical axis is of: the quantity that its traces state, one trace's own name, what several share, or the claim's quantity. */
 export function yLabel(figure: Figure, lines: readonly FigureSeries[], origin: FigureOrigin): string {
   const unit = lines[0]?.unit ?? '';
   if (figure.kind === 'sweep') return withUnit(origin.quantity, unit);
   if (unit === 'strain') return lines.length === 1 && lines[0] ? `${lines[0].label}, strain` : 'strain';
+  const stated = theOnly(lines.map((line) => line.quantity));
   const name = lines.length === 1 ? (lines[0]?.label ?? '') : (shared(lines.map((line) => line.label)) ?? 'value');
-  return withUnit(name, unit);
+  return withUnit(stated ?? name, unit);
 }
 
 /** Which point of the claim is drawn; a figure over the whole sweep is of all of them. */

@@ -6,7 +6,7 @@ import type { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
 
 const DRAWN = 600;
 
-const line = (label: string, role: FigureSeries['role'], values: readonly (number | null)[]): FigureSeries => ({ label, unit: '1/Hz', role, axis: 'left', scale: 'log', values });
+const line = (label: string, role: FigureSeries['role'], values: readonly (number | null)[]): FigureSeries => ({ label, quantity: 'amplitude |h̃|', unit: '1/Hz', role, axis: 'left', scale: 'log', values });
 
 /**
  * Both amplitudes over the band; solid where the hybrid takes them from the file.

@@ -8,7 +8,7 @@ const DRAWN_INCLINATIONS = 37;
 const FARTHEST = Math.PI / 2;
 const AZIMUTHS = 12;
 
-const line = (label: string, role: FigureSeries['role'], values: readonly number[]): FigureSeries => ({ label, unit: '', role, axis: 'left', scale: 'linear', values });
+const line = (label: string, role: FigureSeries['role'], values: readonly number[]): FigureSeries => ({ label, quantity: 'match 𝓜', unit: '', role, axis: 'left', scale: 'linear', values });
 
 const evenly = (to: number, n: number): number[] => Array.from({ length: n }, (_, i) => (to * i) / (n - 1));
 

@@ -8,7 +8,7 @@ import type { Evaluated } from './recipe';
 const MASSES = 81;
 const SPINS = 181;
 
-const line = (label: string, role: FigureSeries['role'], values: readonly (number | null)[]): FigureSeries => ({ label, unit: '', role, axis: 'left', scale: 'linear', values });
+const line = (label: string, role: FigureSeries['role'], values: readonly (number | null)[]): FigureSeries => ({ label, quantity: 'match 𝓜', unit: '', role, axis: 'left', scale: 'linear', values });
 
 /**
  * The match with the best template over its mass, everything else free as in the claim.
@@ -35,7 +35,7 @@ export function massFigure(route: DetectorRoute, point: DetectorPoint, { outcome
       title: `Match with ${b.waveform.name} over the mass of the template`,
       at: point.at,
       x: { label: 'mass of the template', unit: massMsun === null ? '× its own' : 'M☉', scale: 'log', values: factors.map((x) => x * unit) },
-      series: [line('best over time and phase', 'recomputed', values), line('fitting factor', 'band-high', factors.map((x) => (x === outcome.massFactor ? outcome.match : null)))],
+      series: [line('best over time and phase', 'recomputed', values), { ...line('fitting factor', 'noise', factors.map((x) => (x === outcome.massFactor ? outcome.match : null))), points: true }],
     },
   ];
 }
