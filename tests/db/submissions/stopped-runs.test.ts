@@ -1,7 +1,9 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { database } from '@/db/client';
+import { askStop } from '@/db/writes/runs/ask-stop';
 import { err } from '@/lib/kernel/result';
 import type { SignedInActor } from '@/lib/policy/actor';
+import type { SubmissionGrant } from '@/lib/policy/grant';
 import { stopRun } from '@/lib/services/runs/stop-run';
 import { checkDraft } from '@/lib/services/submissions/check-draft';
 import { getDraft } from '@/lib/services/submissions/get-draft';
@@ -72,6 +74,21 @@ describe('a run of others', () => {
     const theirs = must(await requestVariation(referee, id, { claimId: 'C1', changes: { settings: { fLowHz: 30 } }, note: '' }));
     expect(await stopRun(author, id, theirs.runId)).toMatchObject({ ok: false, error: { code: 'not-found' } });
     must(await stopRun(referee, id, theirs.runId));
+  });
+
+  it('takes no word to stop where it is official or of another submission, whatever a service saw', async () => {
+    const grant = { submissionId: id } as SubmissionGrant<'submission.stop-run'>;
+    const elsewhere = { submissionId: '00000000-0000-4000-8000-000000000000' } as SubmissionGrant<'submission.stop-run'>;
+    const all = await desk.sql('select id, kind from runs') as { readonly id: string; readonly kind: string }[];
+    const stopped = async () => (await desk.sql('select run_id from run_stops')).length;
+    const before = await stopped();
+    await database().transaction(async (tx) => {
+      for (const { id: runId, kind } of all) {
+        await askStop(tx, elsewhere, runId);
+        if (kind === 'official') await askStop(tx, grant, runId);
+      }
+    });
+    expect([all.some(({ kind }) => kind === 'official'), await stopped()]).toEqual([true, before]);
   });
 
   it('leaves a word that the database itself never changes', async () => {
