@@ -1,5 +1,8 @@
 import { z } from 'zod';
+import type { Transaction } from '@/db/client';
 import { findLatestRun } from '@/db/reads/runs/run';
+import { listFindingAnswers } from '@/db/reads/submissions/finding-answers';
+import type { RevisionRow } from '@/db/reads/submissions/revision';
 import { writeAnswer } from '@/db/writes/submissions/answer-finding';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
@@ -8,7 +11,7 @@ import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
 import { currentRevision } from '@/lib/services/files/add-file';
 import { GUESS_CODE } from '@/lib/pipeline/guesses/guess-state';
 import { asDraftSheet } from './draft-sheet';
-import { namesGuess } from './names-guess';
+import { MOST_GUESS_ANSWERS, namesGuess } from './names-guess';
 import { LODGED_ALREADY } from './update-draft';
 
 export const findingAnswer = z.strictObject({
@@ -25,17 +28,24 @@ export function answerFinding(actor: Actor, submissionId: string, input: Finding
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
     const row = await currentRevision(tx, submissionId);
     if (!row) return { ok: false, error: NOT_FOUND };
-    if (input.code.startsWith(GUESS_CODE)) {
-      if (!namesGuess(asDraftSheet(row.sheet, row), input)) return fail('conflict', 'The draft has nothing of that name to guess of. It may have been renamed; look at its waveforms and curves again.');
-      await writeAnswer(tx, grant, row.id, input, input.answer);
-      note({ answered: input.code, where: input.where });
-      return ok(null);
-    }
-    const run = await findLatestRun(tx, row.id, 'check');
-    const found = run?.result?.claims.some((claim) => claim.findings.some((f) => f.code === input.code && f.where === input.where && f.text === input.text));
-    if (!found) return fail('conflict', 'The latest check has no such finding. Look at its findings again; they may have changed with a later check.');
+    const nothing = await (input.code.startsWith(GUESS_CODE) ? noGuess(tx, row, input) : noFinding(tx, row, input));
+    if (nothing !== null) return fail('conflict', nothing);
     await writeAnswer(tx, grant, row.id, input, input.answer);
     note({ answered: input.code, where: input.where });
     return ok(null);
   });
+}
+
+async function noFinding(tx: Transaction, { id }: RevisionRow, { code, where, text }: FindingAnswerInput): Promise<string | null> {
+  const run = await findLatestRun(tx, id, 'check');
+  const found = run?.result?.claims.some((claim) => claim.findings.some((f) => f.code === code && f.where === where && f.text === text));
+  return found ? null : 'The latest check has no such finding. Look at its findings again; they may have changed with a later check.';
+}
+
+/** A browser guesses by itself, so no run is asked; what is kept is bounded instead. */
+async function noGuess(tx: Transaction, row: RevisionRow, input: FindingAnswerInput): Promise<string | null> {
+  if (!namesGuess(asDraftSheet(row.sheet, row), input)) return 'The draft has nothing of that name to guess of. It may have been renamed; look at its waveforms and curves again.';
+  const answers = await listFindingAnswers(tx, row.id);
+  if (input.answer === '' || answers.filter(({ code }) => code.startsWith(GUESS_CODE)).length < MOST_GUESS_ANSWERS) return null;
+  return `This revision has ${MOST_GUESS_ANSWERS} answers to guesses, which is as many as are kept. Take one back first.`;
 }

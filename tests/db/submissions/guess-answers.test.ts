@@ -78,7 +78,8 @@ describe('a guess at the sense of rotation', () => {
     const other = await desk.person('S. Vasterling');
     const word = { code: 'guess/rotation', where: '/waveforms/A/polarisation', text: 'x', answer: 'Not so.' };
     expect(await answerFinding(other, id, word)).toMatchObject({ ok: false, error: { code: 'not-found' } });
-    for (const wrong of [{ ...word, where: '/waveforms/B/polarisation' }, { ...word, where: '/claims/0' }, { ...word, code: 'guess/weather' }])
+    const long = { ...word, text: '−'.repeat(1500) };
+    for (const wrong of [long, { ...word, where: '/waveforms/B/polarisation' }, { ...word, where: '/claims/0' }, { ...word, code: 'guess/weather' }])
       expect(await answerFinding(author, id, wrong)).toMatchObject({ ok: false, error: { code: 'conflict' } });
   });
 });
