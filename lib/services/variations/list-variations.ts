@@ -2,7 +2,7 @@ import { findReadings, findRun, type RunRow } from '@/db/reads/runs/run';
 import { countVariations, listVariations as readVariations, type VariationRow } from '@/db/reads/variations/variations';
 import type { OfferedReading } from '@/lib/explain/read-otherwise';
 import { ok } from '@/lib/kernel/result';
-import type { ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
+import { readingsOfClaim, type ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
 import { readSubmission } from '@/lib/services/act';
 import type { Outcome } from '@/lib/services/app-error';
@@ -34,7 +34,7 @@ export async function pageWithReadings(actor: Actor, submissionId: string, { cla
   const page = await pageVariations(actor, submissionId, ask);
   if (!page.ok) return page;
   const readings = claimId === undefined ? ok<ReadingsByClaim>({}) : await readingsFor(actor, submissionId, undefined);
-  return readings.ok ? ok({ ...page.value, readings: readings.value[claimId ?? ''] ?? [] }) : readings;
+  return readings.ok ? ok({ ...page.value, readings: readingsOfClaim(readings.value, claimId ?? '') }) : readings;
 }
 
 export function pageVariations(actor: Actor, submissionId: string, ask: PageAsk): Promise<Outcome<Page<VariationView> & Pick<VariationList, 'left'>>> {

@@ -10,6 +10,7 @@ import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
 import { webEnv } from '@/lib/env';
 import { enqueue } from '@/lib/jobs/enqueue';
 import { ok } from '@/lib/kernel/result';
+import { readingsOfClaim } from '@/lib/pipeline/explain/offered-readings';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
 import type { SubmissionFacts } from '@/lib/policy/facts';
 import type { SubmissionGrant } from '@/lib/policy/grant';
@@ -49,7 +50,7 @@ export function requestVariation(actor: Actor, submissionId: string, input: z.ou
     const varied = varySheet(declared, input.claimId, input.changes);
     const sheet = varied.ok ? readable(varied.value, input.changes, declared) : varied;
     if (!sheet.ok) return sheet;
-    const read = readingsOf(input.changes, (await findReadings(tx, run.id))[input.claimId] ?? []);
+    const read = readingsOf(input.changes, readingsOfClaim(await findReadings(tx, run.id), input.claimId));
     if (!read.ok) return read;
     const { readings: _ids, ...changes } = input.changes;
     const kept = { ...changes, ...(read.value.length > 0 && { readings: read.value }) };
