@@ -18,6 +18,8 @@ interface StandingProps {
   readonly follow: boolean;
 }
 
+const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
+
 /** How the rerun stands until its number is there, or why none came. */
 export function RunStanding({ submissionId, runId, run, follow }: StandingProps) {
   const router = useRouter();
@@ -27,7 +29,7 @@ export function RunStanding({ submissionId, runId, run, follow }: StandingProps)
   if (run.state === 'stopped') return <Notice kind="stop" word="Stopped"><p>{run.because}</p></Notice>;
   if (run.state === 'refused') return <Notice kind="stop" word="Refused">{run.problems.map((problem) => <p key={problem.where}>{formatProblem(problem)}</p>)}</Notice>;
   const told = now?.runId === runId ? now : run;
-  const words = told.doing || (run.state === 'queued' ? 'Waiting for a worker' : 'Under way');
+  const words = capital(told.doing) || (run.state === 'queued' ? 'Waiting for a worker' : 'Under way');
   return (
     <div className="grid max-w-[68ch] gap-2">
       <OfflineStrap>The rerun goes on without you; its number is here when the connection is back.</OfflineStrap>

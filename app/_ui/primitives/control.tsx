@@ -12,7 +12,7 @@ type TextareaProps = TextareaHTMLAttributes<HTMLTextAreaElement> & { readonly re
 export const Textarea = ({ className, ...rest }: TextareaProps) => <textarea {...rest} className={classes(box, readOnly, 'min-h-[84px] resize-y leading-[22px]', className)} />;
 
 type SelectProps = SelectHTMLAttributes<HTMLSelectElement> & { readonly ref?: Ref<HTMLSelectElement>; readonly dense?: boolean };
-export const Select = ({ className, dense, ...rest }: SelectProps) => <select {...rest} className={classes(box, 'select-arrow', dense ? 'min-h-8 py-[5px]' : 'min-h-9', className)} />;
+export const Select = ({ className, dense, ...rest }: SelectProps) => <select {...rest} className={classes(box, 'select-arrow truncate pr-[30px]', dense ? 'min-h-8 py-[5px]' : 'min-h-9', className)} />;
 
 interface Labelled {
   readonly label: ReactNode;

@@ -60,7 +60,7 @@ export function guessTimeUnit(waveform: Waveform, { chirpMass, peakOmega }: Insp
   const other = declared === 'M' ? 's' : 'M';
   const mass = `as seconds it is a total mass of ${short(ratio / MSUN_S)} solar masses${eta === null ? ' for equal ones' : ''}`;
   const inOther = declared === 'M' ? `; ${mass}` : '; as times in M it would fit';
-  const wants = eta === null ? 'binaries have 0.08 to 0.43 M' : `the declared mass ratio gives ${short(expected)} M`;
+  const wants = eta === null ? 'binaries have 0.08 to 0.44 M, read here to about a tenth' : `the declared mass ratio gives ${short(expected)} M`;
   // With the declared ratio of masses, Mω at the peak is the declared one times what the chirp says M is.
   const peak = agrees && !isBare(waveform) ? peakOmega : peakOmega * ratio;
   return {

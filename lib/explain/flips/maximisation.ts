@@ -6,7 +6,12 @@ const sets: readonly (readonly MaximiseOver[])[] = [[], ['phase'], ['time'], ['t
 
 const names: Readonly<Record<MaximiseOver, string>> = { time: 'time', phase: 'phase', polarisation: 'polarisation', inclination: 'inclination', templateMass: 'the template’s mass' };
 
-const listed = (set: readonly MaximiseOver[]): string => (set.length === 0 ? 'nothing is maximised' : `the maximum is taken over ${set.map((one) => names[one]).join(', ')} only`.replace(/ only$/, set.length < 2 ? ' alone' : ''));
+function listed(set: readonly MaximiseOver[]): string {
+  const words = set.map((one) => names[one]);
+  const last = words.pop();
+  if (last === undefined) return 'nothing is maximised';
+  return words.length === 0 ? `the maximum is taken over ${last} alone` : `the maximum is taken over ${words.join(', ')} and ${last}`;
+}
 
 const key = (set: readonly unknown[]): string => [...set].sort().join(',');
 

@@ -29,7 +29,7 @@ function fromCheck(check: Draft['check'], answers: readonly FindingAnswer[]): re
   const { run, current } = check;
   if (run.state === 'queued' || run.state === 'running') return ['The check is still running. Wait for it to end.'];
   if (!current) return ['Files, settings or claims have changed since the last check. Check again.'];
-  if (run.state === 'stopped') return [`The check stopped: ${run.because} Check again.`];
+  if (run.state === 'stopped') return ['The last check ended before there was a number. Check again.'];
   if (run.state === 'refused') return [`The check could not read the sheet or a file: ${run.problems.length} to mend, listed with the check.`];
   if (run.state !== 'measured') return [];
   const found = run.result.claims.flatMap((claim) => claim.findings.map((finding) => ({ claim: claim.id, ...finding })));
