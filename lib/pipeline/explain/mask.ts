@@ -6,7 +6,7 @@ const EDGE = 0.1;
 
 /** 1 outside, 0 inside, cos² between; the edges lie within the stretch, so that nothing outside is touched. */
 function weights(axis: Float64Array, { from, to }: Mask): Float64Array {
-  const edge = EDGE * (to - from);
+  const edge = EDGE * to - EDGE * from;
   return axis.map((t) => {
     const inside = Math.min(t - from, to - t) / edge;
     return inside <= 0 ? 1 : inside >= 1 ? 0 : Math.cos((Math.PI / 2) * inside) ** 2;

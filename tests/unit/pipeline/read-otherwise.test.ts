@@ -62,6 +62,10 @@ describe('a claim read otherwise', () => {
     expect(masked).toBeLessThan(plain);
   });
 
+  it('leaves nothing where the stretch is as long as numbers go', async () => {
+    expect(oneClaim(await bursts(LOUD, { readings: [], mask: { from: -1.7e308, to: 1.7e308 } })).points[0]?.value ?? 0).toBe(0);
+  });
+
   const swept = { ...LOUD, id: 'C3', settings: { ...LOUD.settings, distanceMpc: 400 }, over: { totalMassMsun: [50, 60] }, claimed: ['5', '5'], tolerance: 1 };
   const ofMass = async (otherwise?: ReadOtherwise) => {
     const { sheet, files } = turningBurst('M', swept);
