@@ -36,11 +36,12 @@ const shared = (labels: readonly string[]): string | null => {
 /** What the vertical axis is of: the quantity that its traces state, one trace's own name, what several share, or the claim's quantity. */
 export function yLabel(figure: Figure, lines: readonly FigureSeries[], origin: FigureOrigin): string {
   const unit = lines[0]?.unit ?? '';
+  const stated = theOnly(lines.map((line) => line.quantity));
+  if (stated !== null) return withUnit(stated, unit);
   if (figure.kind === 'sweep') return withUnit(origin.quantity, unit);
   if (unit === 'strain') return lines.length === 1 && lines[0] ? `${lines[0].label}, strain` : 'strain';
-  const stated = theOnly(lines.map((line) => line.quantity));
   const name = lines.length === 1 ? (lines[0]?.label ?? '') : (shared(lines.map((line) => line.label)) ?? 'value');
-  return withUnit(stated ?? name, unit);
+  return withUnit(name, unit);
 }
 
 /** Which point of the claim is drawn; a figure over the whole sweep is of all of them. */
