@@ -22,8 +22,9 @@ interface Passage {
 const AROUND = 40;
 
 /** The words found with a little of what stands around them, on one line. */
-function quoted({ where, text }: Written, from: number, length: number): string {
-  const [start, end] = [Math.max(0, from - AROUND), Math.min(text.length, from + length + AROUND)];
+function quoted({ where, text, saysWhose }: Written, from: number, length: number): string {
+  const around = saysWhose === true ? 0 : AROUND;
+  const [start, end] = [Math.max(0, from - around), Math.min(text.length, from + length + around)];
   // A formula cut in the middle is no words.
   const words = text.slice(start, end).replace(/\${1,2}[^$]*(?:\${1,2}|$)/g, '…').replace(/\s+/g, ' ').trim();
   const passage = `${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}`;

@@ -11,6 +11,8 @@ export interface Written {
   readonly where: string;
   readonly inFile: boolean;
   readonly text: string;
+  /** It says whose it is beside (V29): no more of it is quoted than the words that tell. */
+  readonly saysWhose?: boolean;
 }
 
 /** The noise of the claim as declared. */

@@ -12,6 +12,7 @@ import type { Flip } from '@/lib/explain/flip';
 import type { FlipContext, NoiseFacts, Shown, SiblingClaim, Written } from '@/lib/explain/flips/flip-context';
 import { flipsOf } from '@/lib/explain/flips/flips-of';
 import type { JudgedClaim, JudgedPoint } from '@/lib/explain/search/node';
+import { identityIn } from '@/lib/formats/hidden-identity';
 import type { Inputs } from '../read-inputs';
 import type { ResultClaim } from '../result';
 import type { Asked } from './predict';
@@ -108,5 +109,5 @@ function textsOf(claim: Claim, sheet: ClaimSheet, inputs: Inputs): Written[] {
   const statement = [sheet.title, sheet.statement].filter((text) => text !== '').map((text) => ({ where: 'the statement', inFile: false, text }));
   const ofWaveforms = waveformNames(claim.of).flatMap((name) => inputs.waveforms.get(name)?.writing ?? []);
   const ofNoise = claim.noise === null ? [] : (inputs.noise.get(claim.noise)?.writing ?? []);
-  return [...statement, ...[...ofWaveforms, ...ofNoise].map((written) => ({ ...written, inFile: true }))];
+  return [...statement, ...[...ofWaveforms, ...ofNoise].map((written) => ({ ...written, inFile: true, saysWhose: identityIn(written.text) !== null }))];
 }
