@@ -49,7 +49,7 @@ export function ThreadCard({ thread, bodies, place, attachable }: ThreadCardProp
 }
 
 /** A claim of several numbers has no printed one of its own. */
-const shown = (n: { readonly printed: string | null; readonly value: number | null }): string => (n.printed === null ? 'several numbers' : n.value === null ? 'not computable' : n.value.toPrecision(7).replace('-', '−'));
+const shown = (n: { readonly printed?: string | null; readonly value: number | null }): string => (n.printed === null ? 'several numbers' : n.value === null ? 'not computable' : n.value.toPrecision(7).replace('-', '−'));
 
 function Comment({ comment, body }: { readonly comment: CommentView; readonly body: ReactNode }) {
   const { when, variation } = comment;
