@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { tabulatedCurve } from '@/lib/engine/noise/tabulated-curve';
 import { quantities } from '@/lib/engine/quantities/registry';
+import { sweepFigure } from '@/lib/engine/quantities/sweep-figure';
 import { binary, columns, curve, inMasses, measured, type Claim } from '../../../support/detector-claims';
 
 const a = binary('A');
@@ -269,11 +270,13 @@ describe('a sweep', () => {
     expect(m.points.every((p) => p.expandedUncertainty! > 0)).toBe(true);
   });
 
-  it('is drawn with its band and its claimed points, and with the integrand and the strain', () => {
-    expect(m.figures.map((f) => f.kind)).toEqual(['waveforms', 'integrand', 'sweep']);
-    for (const { x, series } of m.figures) for (const s of series) expect(s.values.length).toBe(x.values.length);
-    expect(Math.max(...m.figures.map((f) => f.x.values.length))).toBeLessThanOrEqual(1500);
-    expect(m.figures[2]!.series.map((s) => s.role)).toEqual(['recomputed', 'band-low', 'band-high', 'claimed']);
+  it('brings the integrand and the strain, and is drawn with its band and its claimed points', () => {
+    expect(m.figures.map((f) => f.kind)).toEqual(['waveforms', 'integrand']);
+    const request = { claimId: 'C', inputs: { of: { a }, noise: curve('G2') }, settings: {}, over: { setting: 'totalMassMsun', values }, claimed, withFigures: true } as const;
+    const figures = [...m.figures, ...sweepFigure(quantities.get('snr')!, request, m.points)];
+    for (const { x, series } of figures) for (const s of series) expect(s.values.length).toBe(x.values.length);
+    expect(Math.max(...figures.map((f) => f.x.values.length))).toBeLessThanOrEqual(1500);
+    expect(figures[2]!.series.map((s) => s.role)).toEqual(['recomputed', 'band-low', 'band-high', 'claimed']);
   });
 
   it('gives the same bytes every time', () => {
