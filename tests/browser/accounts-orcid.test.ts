@@ -1,8 +1,8 @@
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openDatabase } from '@/db/client';
 import { createAccount } from '@/lib/services/accounts/create-account';
+import { accessibilityFaults, overflowOf } from '../support/accessibility';
 import { startApplication, type TestApplication } from '../support/application';
 import { launchBrowser } from '../support/browser';
 
@@ -42,9 +42,8 @@ async function expectNoBarrier(where: string): Promise<void> {
     for (const width of [1440, 1024, 390]) {
       await page.emulateMedia({ colorScheme });
       await page.setViewportSize({ width, height: 900 });
-      const { violations } = await new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa']).analyze();
-      expect(violations.map((v) => `${where} ${width} ${colorScheme}: ${v.id} at ${v.nodes.map((n) => n.target.join(' ')).join('; ')}`)).toEqual([]);
-      expect(await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth), `${where} ${width}`).toBe(0);
+      expect(await accessibilityFaults(page), `${where} ${width} ${colorScheme}`).toEqual([]);
+      expect(await overflowOf(page), `${where} ${width}`).toBe(0);
     }
   await page.setViewportSize({ width: 1440, height: 900 });
 }

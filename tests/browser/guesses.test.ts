@@ -1,11 +1,11 @@
 import { readFileSync } from 'node:fs';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openDatabase } from '@/db/client';
 import { createAccount } from '@/lib/services/accounts/create-account';
+import { accessibilityFaults } from '../support/accessibility';
 import { startApplication, type TestApplication } from '../support/application';
 import { launchBrowser } from '../support/browser';
 
@@ -43,8 +43,7 @@ afterAll(async () => {
 });
 
 async function expectNoBarrier(where: string): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa']).analyze();
-  expect(violations.map((v) => `${where}: ${v.id} at ${v.nodes.map((n) => n.target.join(' ')).join('; ')}`)).toEqual([]);
+  expect(await accessibilityFaults(page), where).toEqual([]);
 }
 const button = (name: string) => page.getByRole('button', { name, exact: true });
 const gone = (name: string) => button(name).waitFor({ state: 'detached' });

@@ -1,6 +1,6 @@
-import { AxeBuilder } from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { accessibilityFaults, overflowOf } from '../support/accessibility';
 import { startApplication, type TestApplication } from '../support/application';
 import { launchBrowser } from '../support/browser';
 
@@ -37,11 +37,6 @@ async function visit(path: string, width: number, colorScheme: 'light' | 'dark')
   return { page, remarks, status: response?.status() };
 }
 
-const faultsOf = async (page: Page): Promise<string[]> =>
-  (await new AxeBuilder({ page }).analyze()).violations.map((v) => `${v.id}: ${v.nodes.map((n) => n.target.join(' ')).join('; ')}`);
-
-const overflowOf = (page: Page): Promise<number> => page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
-
 describe.each(THEMES)('in the %s theme, at every width', (theme) => {
   it.each(PATHS)('%s is free of accessibility faults, fits its window and says nothing on the console', async (path) => {
     const { page, remarks, status } = await visit(path, WIDTHS[0], theme);
@@ -49,7 +44,7 @@ describe.each(THEMES)('in the %s theme, at every width', (theme) => {
     for (const width of WIDTHS) {
       await page.setViewportSize({ width, height: 900 });
       expect([width, await overflowOf(page)]).toEqual([width, 0]);
-      expect([width, ...(await faultsOf(page))]).toEqual([width]);
+      expect([width, ...(await accessibilityFaults(page))]).toEqual([width]);
     }
     expect(remarks).toEqual([]);
     await page.context().close();
@@ -82,7 +77,7 @@ describe('the frame of every page', () => {
       const { page, status } = await visit(path, 1440, 'light');
       expect([path, status]).toEqual([path, 404]);
       expect(await page.getByRole('heading', { level: 1 }).innerText()).toBe('Nothing here');
-      expect(await faultsOf(page)).toEqual([]);
+      expect(await accessibilityFaults(page)).toEqual([]);
       await page.context().close();
     }
   });

@@ -1,8 +1,8 @@
-import { AxeBuilder } from '@axe-core/playwright';
 import type { Browser, BrowserContextOptions, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openDatabase, type Database } from '@/db/client';
 import { openAccount } from '@/db/writes/accounts/open-account';
+import { accessibilityFaults, overflowOf } from '../support/accessibility';
 import { startApplication, type TestApplication } from '../support/application';
 import { launchBrowser } from '../support/browser';
 import { plantRecord, stand } from '../support/planted-records';
@@ -46,9 +46,8 @@ describe.each(['light', 'dark'] as const)('in the %s theme, at every width', (co
     const { page, remarks } = await open(path, { colorScheme });
     for (const width of [1440, 1024, 390]) {
       await page.setViewportSize({ width, height: 900 });
-      expect([width, await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth)]).toEqual([width, 0]);
-      const faults = (await new AxeBuilder({ page }).analyze()).violations.map((v) => `${v.id}: ${v.nodes.map((n) => n.target.join(' ')).join('; ')}`);
-      expect([width, ...faults]).toEqual([width]);
+      expect([width, await overflowOf(page)]).toEqual([width, 0]);
+      expect([width, ...(await accessibilityFaults(page))]).toEqual([width]);
     }
     expect(remarks).toEqual([]);
     await page.context().close();

@@ -2,12 +2,12 @@ import { execFile } from 'node:child_process';
 import { cpSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { openDatabase } from '@/db/client';
 import type { AccountRole } from '@/lib/policy/account-role';
 import { createAccount } from '@/lib/services/accounts/create-account';
+import { accessibilityFaults } from '../support/accessibility';
 import { startApplication, type TestApplication } from '../support/application';
 import { launchBrowser } from '../support/browser';
 import { temporaryFolder } from '../support/fakes';
@@ -58,8 +58,7 @@ async function openPage(who: string): Promise<Page> {
 }
 
 async function expectNoBarrier(page: Page): Promise<void> {
-  const { violations } = await new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa']).analyze();
-  expect(violations.map((v) => `${page.url()}: ${v.id} at ${v.nodes.map((n) => n.target.join(' ')).join('; ')}`)).toEqual([]);
+  expect(await accessibilityFaults(page), page.url()).toEqual([]);
 }
 
 async function visit(page: Page, address: string): Promise<void> {
