@@ -24,6 +24,9 @@ const ratio = (a: number, b: number): string => `${(a / b).toFixed(1)} ×`;
 const tableRow = ({ what, ours, theirs, target, note }: Row): string =>
   `| ${what} | ${theirs.cpuSeconds.toFixed(2)} | ${ours.cpuSeconds.toFixed(2)} | ${ratio(theirs.cpuSeconds, ours.cpuSeconds)} | ${ratio(theirs.seconds, ours.seconds)} | ${target} | ${note} |`;
 
+/** One row alone, for who works on it; the page stays as it was. */
+export const printRow = (row: Row): void => console.log(tableRow(row));
+
 export function writeReport({ rows, skipped, errorBar, growth, machine, date }: Report): void {
   const text = `# Speed
 

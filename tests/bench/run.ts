@@ -1,6 +1,7 @@
 /**
  * The benchmark: the engine against a reference script on this machine, alternating, so that both meet
  * the same load. Ratios are what counts; seconds of a shared machine are not. It is no timed test.
+ * `--bank` measures the row on banks alone and writes nothing.
  */
 import { execFileSync } from 'node:child_process';
 import { mkdtempSync, rmSync } from 'node:fs';
@@ -15,7 +16,7 @@ import { benchFluxes } from './fluxes';
 import { benchGrowth, growthText } from './growth';
 import { parseTable, writeTable } from './parse';
 import { openReference, type Reference } from './reference';
-import { writeReport, type Row } from './report';
+import { printRow, writeReport, type Row } from './report';
 import { searchCost } from './search-cost';
 import { quickest, timed, type Spent } from './stopwatch';
 import { makePair } from './sweep';
@@ -51,7 +52,17 @@ async function benchParse(reference: Reference, folder: string): Promise<Row> {
 
 const folder = mkdtempSync(join(tmpdir(), 'counterfoil-bench-'));
 const reference = openReference();
+const only = process.argv.slice(2).includes('--bank');
 try {
+  if (only) printRow(await benchBank(reference, folder));
+  else await benchAll();
+} finally {
+  reference.close();
+  rmSync(folder, { recursive: true, force: true });
+}
+
+/** Every row, and the page of them. */
+async function benchAll(): Promise<void> {
   const versions = await reference.ask<Record<string, string>>({ do: 'versions' });
   const pair = makePair();
   const rows = await benchSweep(pair, reference, folder);
@@ -67,7 +78,4 @@ try {
   const commit = execFileSync('git', ['rev-parse', '--short', 'HEAD'], { encoding: 'utf8' }).trim();
   const machine = `${cpus().length} × ${cpus()[0]?.model ?? 'unknown processor'}, Node ${process.versions.node}, engine ${ENGINE_VERSION} (${commit}), Python ${versions.python}, numpy ${versions.numpy}, scipy ${versions.scipy}`;
   writeReport({ rows, skipped: arrays.skipped, errorBar: `${errorBar}\n\n${bank[0]}\n\n${await searchCost()}`, growth: `${growth}\n\n${bank[1]}`, machine, date: new Date().toISOString().slice(0, 10) });
-} finally {
-  reference.close();
-  rmSync(folder, { recursive: true, force: true });
 }
