@@ -96,8 +96,9 @@ export interface SightMatch {
   /** Whence b is seen at the maximum, and by how much it was moved (later > 0). */
   readonly b: Sight;
   readonly timeShiftS: number;
-  /** Factor on b's mass, when maximised over. */
+  /** Factor on b's mass, when maximised over, and whether it is a bound of the range. */
   readonly massFactor?: number;
+  readonly onBound?: boolean;
 }
 
 /** Products of the modes of two waveforms taken once, for any number of sights. */
@@ -116,6 +117,10 @@ export interface SightRequest {
   readonly maximise: readonly MaximiseOver[];
   /** Null when sights of every inclination will be asked for. */
   readonly inclinationRad: number | null;
+  /** Where b's mass is free: its range, and b at a factor of its mass. */
+  readonly mass?: Pick<MatchRequest, 'templateMassRange' | 'rescale'>;
+  /** Asked now and then during long work; throws to stop. */
+  readonly onStep?: () => void;
 }
 
 /**

@@ -27,6 +27,18 @@ function wignerD2(l: number, m: number, inclinationRad: number): number {
   return sum;
 }
 
+/** The last inclination of each (l, m) and the size there: searches turn the azimuth many times under one inclination. */
+const lastSizes = new Map<number, { readonly inclinationRad: number; readonly size: number }>();
+
+function sizeOf(l: number, m: number, inclinationRad: number): number {
+  const key = l * l + l + m;
+  const last = lastSizes.get(key);
+  if (last?.inclinationRad === inclinationRad) return last.size;
+  const size = Math.sqrt((2 * l + 1) / (4 * Math.PI)) * wignerD2(l, m, inclinationRad);
+  lastSizes.set(key, { inclinationRad, size });
+  return size;
+}
+
 /**
  * Spin-weighted spherical harmonic of weight −2 at (ι, φ).
  * Shape:  l ≥ 2, |m| ≤ l (integers); returns one complex number, 0 outside that range.
@@ -37,6 +49,6 @@ function wignerD2(l: number, m: number, inclinationRad: number): number {
  */
 export function spinWeightedHarmonic(l: number, m: number, inclinationRad: number, azimuthRad: number): ComplexNumber {
   if (l < 2 || Math.abs(m) > l) return { re: 0, im: 0 };
-  const size = Math.sqrt((2 * l + 1) / (4 * Math.PI)) * wignerD2(l, m, inclinationRad);
+  const size = sizeOf(l, m, inclinationRad);
   return { re: size * Math.cos(m * azimuthRad), im: size * Math.sin(m * azimuthRad) };
 }

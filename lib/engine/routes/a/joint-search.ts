@@ -58,8 +58,8 @@ const AZIMUTH_STEP = Math.PI / 24;
 const BOUND_SHARE = 1e-6;
 
 /** Factors on the template's mass, ends included. */
-export function massGrid([low, high]: readonly [number, number]): number[] {
-  const steps = Math.max(1, Math.ceil(Math.log(high / low) / Math.log(MASS_RATIO)));
+export function massGrid([low, high]: readonly [number, number], ratio = MASS_RATIO): number[] {
+  const steps = Math.max(1, Math.ceil(Math.log(high / low) / Math.log(ratio)));
   return Array.from({ length: steps + 1 }, (_, i) => low * (high / low) ** (i / steps));
 }
 

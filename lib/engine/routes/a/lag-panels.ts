@@ -29,38 +29,85 @@ export function interpolationWeights(y: number, into: Float64Array): void {
   for (let n = 0; n < NODES; n++) into[n] = into[n]! / total;
 }
 
-/** cos and sin of 2π·bin·x, [bin][node], taken anew at every bin. */
-function turns(x: Float64Array, bins: Int32Array): { cos: Float64Array; sin: Float64Array } {
-  const n = bins.length;
-  const cos = new Float64Array(n * NODES);
-  const sin = new Float64Array(n * NODES);
-  for (let j = 0; j < n; j++) {
-    for (let i = 0; i < NODES; i++) {
-      const cycles = bins[j]! * x[i]!;
-      const angle = 2 * Math.PI * (cycles - Math.round(cycles));
-      cos[j * NODES + i] = Math.cos(angle);
-      sin[j * NODES + i] = Math.sin(angle);
-    }
-  }
-  return { cos, sin };
+/** Nodes lie in pairs about the middle. */
+const PAIRS = NODES / 2;
+
+interface Turns {
+  /** Of each bin at the middle of the panel. */
+  readonly midCos: Float64Array;
+  readonly midSin: Float64Array;
+  /** Of each bin from the middle to the upper node of each pair, [bin][pair]. */
+  readonly cos: Float64Array;
+  readonly sin: Float64Array;
 }
 
-/** Adds Σ_j q_j e^{2πi·bin·x} at the nodes, or its conjugate, to `out`. */
-function addSums(re: Float64Array, im: Float64Array, cos: Float64Array, sin: Float64Array, conjugate: boolean, out: Float64Array, at: number): void {
-  const sumRe = new Float64Array(NODES);
-  const sumIm = new Float64Array(NODES);
-  const nodes = NODES;
-  for (let j = 0; j < re.length; j++) {
-    const [a, b, base] = [re[j]!, im[j]!, j * nodes];
-    for (let i = 0; i < nodes; i++) {
-      const [c, s] = [cos[base + i]!, sin[base + i]!];
-      sumRe[i]! += a * c - b * s;
-      sumIm[i]! += a * s + b * c;
+/** cos and sin of 2π·bin·x, taken anew at every bin. */
+function turns(middle: number, half: number, bins: Int32Array): Turns {
+  const n = bins.length;
+  const made = { midCos: new Float64Array(n), midSin: new Float64Array(n), cos: new Float64Array(n * PAIRS), sin: new Float64Array(n * PAIRS) };
+  const angleOf = (cycles: number): number => 2 * Math.PI * (cycles - Math.round(cycles));
+  for (let j = 0; j < n; j++) {
+    const mid = angleOf(bins[j]! * middle);
+    made.midCos[j] = Math.cos(mid);
+    made.midSin[j] = Math.sin(mid);
+    for (let i = 0; i < PAIRS; i++) {
+      const angle = angleOf(bins[j]! * half * chebyshevPoints[i]!);
+      made.cos[j * PAIRS + i] = Math.cos(angle);
+      made.sin[j * PAIRS + i] = Math.sin(angle);
     }
   }
-  for (let i = 0; i < nodes; i++) {
-    out[at + 2 * i]! += sumRe[i]!;
-    out[at + 2 * i + 1]! += conjugate ? -sumIm[i]! : sumIm[i]!;
+  return made;
+}
+
+/** One pair of elements, bin by bin and turned to the middle: sums and differences of what lies at f and at −f. */
+interface Folded {
+  readonly sumRe: Float64Array;
+  readonly sumIm: Float64Array;
+  readonly gapRe: Float64Array;
+  readonly gapIm: Float64Array;
+}
+
+const foldedOf = (n: number): Folded => ({ sumRe: new Float64Array(n), sumIm: new Float64Array(n), gapRe: new Float64Array(n), gapIm: new Float64Array(n) });
+
+/** Z_a(−f) Z_b(−f)* e^{−iωt} is the conjugate of Y_a Y_b* e^{iωt}. */
+function fold(p: Element['spectrum'], q: Element['spectrum'], { bins, values: v }: ThinnedWeights, { midCos, midSin }: Turns, out: Folded): void {
+  for (let i = 0; i < bins.length; i++) {
+    const bin = bins[i]!;
+    const [w, c, s] = [v[i]!, midCos[i]!, midSin[i]!];
+    const zRe = w * (p.zRe[bin]! * q.zRe[bin]! + p.zIm[bin]! * q.zIm[bin]!);
+    const zIm = w * (p.zIm[bin]! * q.zRe[bin]! - p.zRe[bin]! * q.zIm[bin]!);
+    const yRe = w * (p.yRe[bin]! * q.yRe[bin]! + p.yIm[bin]! * q.yIm[bin]!);
+    const yIm = w * (p.yIm[bin]! * q.yRe[bin]! - p.yRe[bin]! * q.yIm[bin]!);
+    const [a, b] = [zRe * c - zIm * s, zRe * s + zIm * c];
+    const [d, e] = [yRe * c - yIm * s, yRe * s + yIm * c];
+    out.sumRe[i] = a + d;
+    out.sumIm[i] = b + e;
+    out.gapRe[i] = a - d;
+    out.gapIm[i] = b - e;
+  }
+}
+
+/** Σ over the bins at both nodes of each pair: what turns one way at the upper node turns the other way at the lower. */
+function putSums({ sumRe, sumIm, gapRe, gapIm }: Folded, { cos, sin }: Turns, n: number, out: Float64Array, at: number): void {
+  const [evenRe, oddRe, evenIm, oddIm] = [new Float64Array(PAIRS), new Float64Array(PAIRS), new Float64Array(PAIRS), new Float64Array(PAIRS)];
+  const pairs = PAIRS;
+  for (let j = 0; j < n; j++) {
+    const [a, b, d, e, base] = [sumRe[j]!, sumIm[j]!, gapRe[j]!, gapIm[j]!, j * pairs];
+    for (let i = 0; i < pairs; i++) {
+      const c = cos[base + i]!;
+      const s = sin[base + i]!;
+      evenRe[i]! += a * c;
+      oddRe[i]! += b * s;
+      evenIm[i]! += e * c;
+      oddIm[i]! += d * s;
+    }
+  }
+  for (let i = 0; i < pairs; i++) {
+    const lower = at + 2 * (NODES - 1 - i);
+    out[at + 2 * i] = evenRe[i]! - oddRe[i]!;
+    out[at + 2 * i + 1] = evenIm[i]! + oddIm[i]!;
+    out[lower] = evenRe[i]! + oddRe[i]!;
+    out[lower + 1] = evenIm[i]! - oddIm[i]!;
   }
 }
 
@@ -73,28 +120,14 @@ function addSums(re: Float64Array, im: Float64Array, cos: Float64Array, sin: Flo
  * Source: ⟨a|b⟩ over both polarisations; Chebyshev interpolation, first barycentric form (from memory).
  */
 export function lagPanel(a: readonly Element[], b: readonly Element[], weights: ThinnedWeights, middle: number, half: number): LagPanel {
-  const { bins, values: v } = weights;
-  const n = v.length;
-  const { cos, sin } = turns(chebyshevPoints.map((y) => middle + half * y), bins);
+  const n = weights.values.length;
+  const turned = turns(middle, half, weights.bins);
   const values = new Float64Array(2 * a.length * b.length * NODES);
-  const re = new Float64Array(n);
-  const im = new Float64Array(n);
+  const folded = foldedOf(n);
   a.forEach(({ spectrum: p }, j) =>
     b.forEach(({ spectrum: q }, k) => {
-      const at = 2 * NODES * (j * b.length + k);
-      const halves = [
-        [p.zRe, p.zIm, q.zRe, q.zIm, false],
-        [p.yRe, p.yIm, q.yRe, q.yIm, true],
-      ] as const;
-      for (const [ar, ai, br, bi, conjugate] of halves) {
-        for (let i = 0; i < n; i++) {
-          const bin = bins[i]!;
-          re[i] = v[i]! * (ar[bin]! * br[bin]! + ai[bin]! * bi[bin]!);
-          im[i] = v[i]! * (ai[bin]! * br[bin]! - ar[bin]! * bi[bin]!);
-        }
-        // Z_a(−f) Z_b(−f)* e^{−iωt} is the conjugate of Y_a Y_b* e^{iωt}.
-        addSums(re, im, cos, sin, conjugate, values, at);
-      }
+      fold(p, q, weights, turned, folded);
+      putSums(folded, turned, n, values, 2 * NODES * (j * b.length + k));
     }),
   );
   return { middle, values };

@@ -4,6 +4,7 @@ import { residualSum, shiftS, xOfShift, type Pair } from './alignment';
 import { bestByPairs, bestPlaces, isScannable, pairRequest } from './best-templates';
 import { channelsOf, power, realResponse } from './cross-spectrum';
 import { JointSearch, searchedIn, type Placement } from './joint-search';
+import { massSights } from './mass-sights';
 import { lineSpectrum, modeBank } from './mode-bank';
 import { piecesOf, type Piece } from './file-pieces';
 import { houseNumerics, type Numerics } from './numerics';
@@ -185,7 +186,7 @@ export function createRouteA(numerics: Numerics = houseNumerics, store: Spectrum
     name: 'A',
     gram: (side, band) => lineGram(side, band, store, numerics),
     grams: (side, band, sights) => grams(side, band, sights, store, numerics),
-    sights: (request) => sightMatcher(request, store, numerics),
+    sights: (request) => (request.mass === undefined ? sightMatcher(request, store, numerics) : massSights(request, request.mass, store, numerics)),
     powerOf: closedFormPower,
     modePower: (side, band) => modePower(side, band, store, numerics),
     overlap,

@@ -8,20 +8,15 @@ import { lagPanel, type LagPanel } from './lag-panels';
 import { modeBank } from './mode-bank';
 import type { Numerics } from './numerics';
 import { prepare } from './prepare';
-import { elementsOf, gramOfElements, type Element } from './sight-elements';
+import { elementsOf, gramOfElements, type Element, type Weigh, type Weight } from './sight-elements';
 import type { Spectrum } from './spectrum';
 import { marginOf, thinnedWeights, type ThinnedWeights } from './thinned-weights';
 import type { SpectrumStore } from './spectrum-store';
 
-export interface Weight {
-  readonly re: number;
-  readonly im: number;
-}
-
 /** Two waveforms taken apart on common bins, with their products by lag. */
 export interface SightBench {
-  readonly a: readonly Element[];
-  readonly b: readonly Element[];
+  readonly a: readonly Weigh[];
+  readonly b: readonly Weigh[];
   readonly powerA: (weights: readonly Weight[]) => number;
   readonly powerB: (weights: readonly Weight[]) => number;
   readonly freedom: Freedom;
@@ -122,36 +117,53 @@ function thinned(weights: BinWeights, elements: readonly Element[], stride: numb
   return thinnedWeights(weights, stride, lowest, highest);
 }
 
+interface Parts {
+  readonly a: readonly Element[];
+  readonly power: (weights: readonly Weight[]) => number;
+}
+
+const partsOf = (a: readonly Element[], weights: BinWeights): Parts => ({ a, power: gramOfElements(a, weights) });
+
+/** Of a search over b's mass: how long b may grow, and a's parts by the bins they stand on. */
+export interface Growing {
+  readonly longestS?: number;
+  readonly parts?: Map<string, Parts>;
+}
+
 const has = (maximise: readonly MaximiseOver[], what: MaximiseOver): boolean => maximise.includes(what);
 
 /**
  * Lays two waveforms out for matches from many sights; null when one of them is silent in the band.
- * Shape:  products by lag are summed when a lag is first asked for.
+ * Shape:  products by lag are summed when a lag is first asked for; see `Growing` for a b whose mass is free.
  * Units:  lags in cycles per bin.
  * Error:  see `lagPanel`.
  * Fails:  never.
  * Source: settings.md rule 2.7; the product of two mode sums is a double sum of products of modes.
  */
-export function sightBench(request: SightRequest, store: SpectrumStore, numerics: Numerics): SightBench | null {
+export function sightBench(request: SightRequest, store: SpectrumStore, numerics: Numerics, { longestS, parts }: Growing = {}): SightBench | null {
   const { band, maximise, inclinationRad } = request;
   const plan = inclinationRad === null ? PLAN : { ...PLAN, inclinationRad };
   const sides = [seenFrom(request.a, plan), seenFrom(request.b, plan)] as const;
-  const prepared = prepare({ sides, band, absoluteTimes: !has(maximise, 'time') }, store, numerics);
+  const prepared = prepare({ sides, band, absoluteTimes: !has(maximise, 'time'), ...(longestS === undefined ? {} : { longestS }) }, store, numerics);
   const { weights, dfHz, lagStride } = prepared;
   const stride = Math.floor(lagStride / OVERSAMPLED);
   const modes = request.b.waveform.content.kind === 'modes';
   const inclinationFree = modes && has(maximise, 'inclination');
   const azimuthFree = modes && has(maximise, 'phase');
-  const [a, b] = sides.map((side, i) =>
+  const elements = (i: 0 | 1): Element[] =>
     elementsOf(
-      side,
-      modeBank(side, prepared.dF[i]!, band.fHighHz * side.secondsPerUnit, store, numerics),
+      sides[i],
+      modeBank(sides[i], prepared.dF[i]!, band.fHighHz * sides[i].secondsPerUnit, store, numerics),
       prepared.spectra[i]!,
       i === 1 && inclinationFree ? null : inclinationRad,
       weights,
       marginOf(stride),
-    ),
-  ) as [Element[], Element[]];
+    );
+  const place = `${prepared.spectra[0]!.dF}|${dfHz}|${weights.first}|${weights.values.length}|${stride}`;
+  const ofA = parts?.get(place) ?? partsOf(elements(0), weights);
+  parts?.set(place, ofA);
+  const { a } = ofA;
+  const b = elements(1);
   if (a.length === 0 || b.length === 0 || weights.values.length === 0) return null;
   const freedom = freedomOf('complex', maximise, modes);
   const secondsPerUnit = [sides[0].secondsPerUnit, sides[1].secondsPerUnit] as const;
@@ -160,9 +172,9 @@ export function sightBench(request: SightRequest, store: SpectrumStore, numerics
   const unmovedX = (b[0]!.spectrum.referenceTime * secondsPerUnit[1] - a[0]!.spectrum.referenceTime * secondsPerUnit[0]) * dfHz;
   const hills = freedom.time ? hillsOf({ a, b, weights, lagStride, freedom }, inclinationRad, azimuthFree) : [unmovedX];
   return {
-    a,
-    b,
-    powerA: gramOfElements(a, weights),
+    a: a.map(({ weigh }) => weigh),
+    b: b.map(({ weigh }) => weigh),
+    powerA: ofA.power,
     powerB: gramOfElements(b, weights),
     freedom,
     azimuthFree,
@@ -176,3 +188,33 @@ export function sightBench(request: SightRequest, store: SpectrumStore, numerics
     panelAt: panels(a, b, thinned(weights, [...a, ...b], stride), half),
   };
 }
+
+/** Of half a cycle on either side of a hill: what scans and their climbs reach. */
+const KEPT = 0.8;
+
+/**
+ * The same bench without its spectra: the products around its hills are summed now.
+ * Shape:  a lag elsewhere lays the bench out again.
+ * Units:  as `SightBench`.
+ * Error:  none.
+ * Fails:  never.
+ * Source: a search over masses holds a hundred of them.
+ */
+export function withoutSpectra({ panelAt, ...bench }: SightBench, again: () => SightBench): SightBench {
+  const { hills, half, halfCycle, freedom } = bench;
+  const kept = new Map<number, LagPanel>();
+  const indexOf = (x: number): number => Math.floor(x / (2 * half));
+  const reach = freedom.time ? KEPT * halfCycle : 0;
+  for (const x of hills) for (let i = indexOf(x - reach); i <= indexOf(x + reach); i++) kept.set(i, panelAt((2 * i + 1) * half));
+  return withPanels(bench, kept, indexOf, again);
+}
+
+/** Apart, so that nothing here holds the first bench. */
+const withPanels = (bench: Omit<SightBench, 'panelAt'>, kept: Map<number, LagPanel>, indexOf: (x: number) => number, again: () => SightBench): SightBench => ({
+  ...bench,
+  panelAt: (x) => {
+    const panel = kept.get(indexOf(x)) ?? again().panelAt(x);
+    kept.set(indexOf(x), panel);
+    return panel;
+  },
+});

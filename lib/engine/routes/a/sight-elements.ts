@@ -4,11 +4,23 @@ import type { BinWeights } from './bin-weights';
 import { lineSpectrum, type ModeBank } from './mode-bank';
 import type { Spectrum } from './spectrum';
 
+export interface Weight {
+  readonly re: number;
+  readonly im: number;
+}
+
+/** What a sight multiplies a part by; holds no spectrum, so that tables may outlive those. */
+export type Weigh = (sight: Sight) => Weight;
+
 /** A part of a waveform that a sight only multiplies by a number: a mode, all modes of one m at one inclination, or a column. */
 export interface Element {
   readonly spectrum: Spectrum;
-  readonly weigh: (sight: Sight) => { readonly re: number; readonly im: number };
+  readonly weigh: Weigh;
 }
+
+const byHarmonic = (l: number, m: number): Weigh => (sight) => spinWeightedHarmonic(l, m, sight.inclinationRad, sight.azimuthRad);
+const byAzimuth = (m: number): Weigh => ({ azimuthRad }) => ({ re: Math.cos(m * azimuthRad), im: Math.sin(m * azimuthRad) });
+const asItStands: Weigh = () => ({ re: 1, im: 0 });
 
 /** Beside the whole, an element of less than this part of the power changes no match that could be told apart. */
 const NOTHING = 1e-20;
@@ -22,7 +34,7 @@ function sumsByM(bank: ModeBank, inclinationRad: number, from: number, to: numbe
       from,
       to,
     ),
-    weigh: ({ azimuthRad }) => ({ re: Math.cos(m * azimuthRad), im: Math.sin(m * azimuthRad) }),
+    weigh: byAzimuth(m),
   }));
 }
 
@@ -55,20 +67,19 @@ function withoutSilent(elements: readonly Element[], weights: BinWeights): Eleme
  */
 export function elementsOf(side: Side, bank: ModeBank, line: Spectrum, inclinationRad: number | null, weights: BinWeights, margin: number): Element[] {
   const last = weights.first + weights.values.length - 1;
-  if (side.waveform.content.kind !== 'modes') return [{ spectrum: line, weigh: () => ({ re: 1, im: 0 }) }];
+  if (side.waveform.content.kind !== 'modes') return [{ spectrum: line, weigh: asItStands }];
   const elements =
     inclinationRad === null
-      ? bank.map(({ l, m, spectrum }): Element => ({ spectrum, weigh: (sight) => spinWeightedHarmonic(l, m, sight.inclinationRad, sight.azimuthRad) }))
+      ? bank.map(({ l, m, spectrum }): Element => ({ spectrum, weigh: byHarmonic(l, m) }))
       : bank.length === 0
         ? []
         : sumsByM(bank, inclinationRad, Math.max(bank[0]!.spectrum.firstBin, weights.first - margin), Math.min(bank[0]!.spectrum.lastBin, last + margin));
   return withoutSilent(elements, weights);
 }
 
-/** Hermitian matrix of the products of elements, for norms. */
-export function gramOfElements(elements: readonly Element[], weights: BinWeights): (weights: readonly { re: number; im: number }[]) => number {
-  const table = elements.map((a) => elements.map((b) => innerProduct(a.spectrum, b.spectrum, weights)));
-  return (c) => {
+const formOf =
+  (table: readonly (readonly Weight[])[]) =>
+  (c: readonly Weight[]): number => {
     let sum = 0;
     for (let j = 0; j < c.length; j++) {
       for (let k = 0; k < c.length; k++) {
@@ -78,4 +89,7 @@ export function gramOfElements(elements: readonly Element[], weights: BinWeights
     }
     return sum;
   };
-}
+
+/** Hermitian matrix of the products of elements, for norms. */
+export const gramOfElements = (elements: readonly Element[], weights: BinWeights): ((weights: readonly Weight[]) => number) =>
+  formOf(elements.map((a) => elements.map((b) => innerProduct(a.spectrum, b.spectrum, weights))));

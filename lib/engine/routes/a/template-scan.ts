@@ -57,26 +57,27 @@ function productOf(a: MassSlice, b: PackedSide, buffers: Buffers): CrossSpectrum
 
 /**
  * One signal's slices, those last asked for kept.
- * Shape:  a bank made for this signal among others; a slice for any factor.
+ * Shape:  a bank made for this signal among others; a slice for any factor, on every `stride`-th bin.
  * Units:  as `massSlice`.
  * Error:  as `massSlice`.
  * Fails:  never.
  * Source: ours.
  */
-export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): (factor: number) => MassSlice {
-  const dFOf = (factor: number): number => Number((bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
-  const source = signalSource(a, dFOf(1), { response: request.response, store, numerics });
-  const kept = new Map<number, MassSlice>();
+export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): (factor: number, stride: number) => MassSlice {
+  const dFOf = (factor: number, stride: number): number => Number((stride * bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
+  const source = signalSource(a, dFOf(1, 1), { response: request.response, store, numerics });
+  const kept = new Map<string, MassSlice>();
   let numbers = 0;
-  return (factor) => {
-    const known = kept.get(factor);
+  return (factor, stride) => {
+    const key = `${factor},${stride}`;
+    const known = kept.get(key);
     if (known) return known;
-    const made = massSlice(source, dFOf(factor), bank.weightsAt(factor));
+    const made = massSlice(source, dFOf(factor, stride), bank.weightsAt(factor, stride));
     if ((numbers += 2 * made.re.length) > MOST_KEPT) {
       kept.clear();
       numbers = 2 * made.re.length;
     }
-    kept.set(factor, made);
+    kept.set(key, made);
     return made;
   };
 }
@@ -103,11 +104,12 @@ export function scanTemplates(bank: TemplateBank, a: Side, { everywhere = false,
   let looks = 0;
   const look = (t: number, g: number): MatchBounds => {
     if (++looks % LOOKS_A_STEP === 0) onStep?.();
-    return matchBounds(sliceAt(factors[g]!), bank.templates[t]!);
+    const stride = bank.strideOf(a, t, factors[g]!);
+    return matchBounds(sliceAt(factors[g]!, stride), bank.thinned(t, stride));
   };
   const rough = promising(bank.paths, look, everywhere);
   const sharp = (t: number, factor: number): number => {
-    const product = productOf(sliceAt(factor), bank.templates[t]!, buffers);
+    const product = productOf(sliceAt(factor, 1), bank.templates[t]!, buffers);
     return product.normA > 0 && product.normB > 0 ? findLag(product, 'modulus', 1).value / Math.sqrt(product.normA * product.normB) : 0;
   };
   return { rough, sharp };
