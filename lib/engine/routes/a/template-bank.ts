@@ -13,14 +13,9 @@ export interface TemplateBank {
   readonly templates: readonly PackedSide[];
   /** Of each template, how far it moves at most from the first factor to each other, rad. */
   readonly paths: readonly Float64Array[];
-  /** Every so-manieth bin that alone tells apart all lags of a signal and a template at a factor. */
-  readonly strideOf: (a: Side, template: number, factor: number) => number;
-  /** A template on those bins. */
-  readonly thinned: (template: number, stride: number) => PackedSide;
   /** Width of a bin at a factor on the templates' mass. */
   readonly dfHz: (factor: number) => number;
-  /** Weights of every `stride`-th bin, which are all that first and values mean. */
-  readonly weightsAt: (factor: number, stride: number) => Pick<BinWeights, 'first' | 'values'>;
+  readonly weightsAt: (factor: number) => Pick<BinWeights, 'first' | 'values'>;
 }
 
 export interface BankRequest {
@@ -44,7 +39,7 @@ const MOST_KEPT = 1 << 22;
  */
 export function templateBank({ signals, factors, request, store, numerics }: BankRequest): TemplateBank {
   const { templates: sides, band, response } = request;
-  const { dfHz, stride, pairStride } = templateFrame(signals, sides, factors, store, numerics);
+  const { dfHz, stride } = templateFrame(signals, sides, factors, store, numerics);
   const lowest = Math.max(1, Math.floor(band.fLowHz / dfHz(factors[0]!)) - numerics.edgeOrder);
   const wanted = Math.ceil(band.fHighHz / dfHz(factors[factors.length - 1]!)) + numerics.edgeOrder;
   const highest = Math.max(lowest, Math.min(nyquistBin(sides, dfHz(1), store), wanted));
@@ -62,31 +57,7 @@ export function templateBank({ signals, factors, request, store, numerics }: Ban
     paths.push(pathOf === null ? new Float64Array(1) : pathOf(series, packed, dF));
   }
   const last = Math.min(highest, Math.max(...templates.map(({ first, re }) => first + re.length - 1)));
-  return { templates, paths, strideOf: (a, t, factor) => pairStride(a, sides[t]!, factor), thinned: thinner(templates), dfHz, weightsAt: weightsFor(last) };
-}
-
-function thinner(templates: readonly PackedSide[]): TemplateBank['thinned'] {
-  const kept = new Map<number, PackedSide>();
-  return (t, stride) => {
-    if (stride === 1) return templates[t]!;
-    const key = stride * templates.length + t;
-    const known = kept.get(key);
-    if (known) return known;
-    const made = everyOf(templates[t]!, stride);
-    kept.set(key, made);
-    return made;
-  };
-}
-
-function everyOf({ first: from, re, im }: PackedSide, stride: number): PackedSide {
-  const first = Math.ceil(from / stride);
-  const n = Math.max(0, Math.floor((from + re.length - 1) / stride) - first + 1);
-  const made = { first, re: new Float64Array(n), im: new Float64Array(n) };
-  for (let i = 0, at = first * stride - from; i < n; i++, at += stride) {
-    made.re[i] = re[at]!;
-    made.im[i] = im[at]!;
-  }
-  return made;
+  return { templates, paths, dfHz, weightsAt: weightsFor(last) };
 }
 
 /** No record holds content above it. */
@@ -110,7 +81,7 @@ function tailWeights(lowest: number, highest: number, factors: readonly number[]
   const out = new Float64Array(highest - lowest + 1);
   const inspiral = out.map((_, i) => (lowest + i) ** INSPIRAL);
   for (const g of new Set([0, factors.length >> 1, factors.length - 1])) {
-    const { first, values } = weightsAt(factors[g]!, 1);
+    const { first, values } = weightsAt(factors[g]!);
     const from = first - lowest;
     let total = 0;
     for (let i = 0; i < values.length; i++) total += values[i]! * inspiral[from + i]!;
@@ -119,23 +90,21 @@ function tailWeights(lowest: number, highest: number, factors: readonly number[]
   return out;
 }
 
-function weightsBy({ band }: BankRequest['request'], dfHz: TemplateBank['dfHz'], lowest: number, highest: number, store: SpectrumStore, numerics: Numerics): TemplateBank['weightsAt'] {
+function weightsBy({ band }: BankRequest['request'], dfHz: TemplateBank['dfHz'], firstBin: number, lastBin: number, store: SpectrumStore, numerics: Numerics): TemplateBank['weightsAt'] {
   const weigher = store.weigher(band.noise, numerics.noiseTableHalvings);
-  const kept = new Map<string, BinWeights>();
+  const kept = new Map<number, BinWeights>();
   let numbers = 0;
-  return (factor, stride) => {
-    const key = `${factor},${stride}`;
-    const known = kept.get(key);
+  return (factor) => {
+    const known = kept.get(factor);
     if (known) return known;
-    const df = stride * dfHz(factor);
-    const [firstBin, lastBin] = [Math.ceil(lowest / stride), Math.floor(highest / stride)];
+    const df = dfHz(factor);
     const bins = { dfHz: df, fLowHz: band.fLowHz, fHighHz: Math.min(band.fHighHz, lastBin * df), firstBin, lastBin, curveLowHz: band.noise.fLowHz, curveHighHz: band.noise.fHighHz, order: numerics.edgeOrder };
     const made = binWeights(weigher, bins);
     if ((numbers += made.values.length) > MOST_KEPT) {
       kept.clear();
       numbers = made.values.length;
     }
-    kept.set(key, made);
+    kept.set(factor, made);
     return made;
   };
 }

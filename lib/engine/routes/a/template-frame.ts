@@ -22,8 +22,6 @@ export interface TemplateFrame {
   readonly dfHz: (factor: number) => number;
   /** A power of two; every so-manieth bin alone still tells apart the record of any template. */
   readonly stride: number;
-  /** The same of all lags of one pair at one factor: short records, and a signal that is short beside a heavy template, need fewer bins. */
-  readonly pairStride: (a: Side, template: Side, factor: number) => number;
 }
 
 /**
@@ -39,15 +37,7 @@ export function templateFrame(signals: readonly Side[], templates: readonly Side
   const longest = (sides: readonly Side[]): number => Math.max(...sides.map((side) => spanS(side, store)));
   const span = longest(templates);
   const df = fitted(LAG_ROOM * (longest(signals) / factors[0]! + span), templates[0]!, store, numerics);
-  // In seconds of the templates at their own mass.
-  const strideFor = (lag: number): number => {
-    let stride = 1;
-    while (2 * stride * df * lag * LAG_ROOM <= 1) stride *= 2;
-    return stride;
-  };
-  return {
-    dfHz: (factor) => df / factor,
-    stride: strideFor(span),
-    pairStride: (a, template, factor) => strideFor(spanS(a, store) / factor + spanS(template, store)),
-  };
+  let stride = 1;
+  while (2 * stride * df * span * LAG_ROOM <= 1) stride *= 2;
+  return { dfHz: (factor) => df / factor, stride };
 }

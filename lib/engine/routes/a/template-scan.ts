@@ -57,27 +57,26 @@ function productOf(a: MassSlice, b: PackedSide, buffers: Buffers): CrossSpectrum
 
 /**
  * One signal's slices, those last asked for kept.
- * Shape:  a bank made for this signal among others; a slice for any factor, on every `stride`-th bin.
+ * Shape:  a bank made for this signal among others; a slice for any factor.
  * Units:  as `massSlice`.
  * Error:  as `massSlice`.
  * Fails:  never.
  * Source: ours.
  */
-export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): (factor: number, stride: number) => MassSlice {
-  const dFOf = (factor: number, stride: number): number => Number((stride * bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
-  const source = signalSource(a, dFOf(1, 1), { response: request.response, store, numerics });
-  const kept = new Map<string, MassSlice>();
+export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): (factor: number) => MassSlice {
+  const dFOf = (factor: number): number => Number((bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
+  const source = signalSource(a, dFOf(1), { response: request.response, store, numerics });
+  const kept = new Map<number, MassSlice>();
   let numbers = 0;
-  return (factor, stride) => {
-    const key = `${factor},${stride}`;
-    const known = kept.get(key);
+  return (factor) => {
+    const known = kept.get(factor);
     if (known) return known;
-    const made = massSlice(source, dFOf(factor, stride), bank.weightsAt(factor, stride));
+    const made = massSlice(source, dFOf(factor), bank.weightsAt(factor));
     if ((numbers += 2 * made.re.length) > MOST_KEPT) {
       kept.clear();
       numbers = 2 * made.re.length;
     }
-    kept.set(key, made);
+    kept.set(factor, made);
     return made;
   };
 }
@@ -104,12 +103,11 @@ export function scanTemplates(bank: TemplateBank, a: Side, { everywhere = false,
   let looks = 0;
   const look = (t: number, g: number): MatchBounds => {
     if (++looks % LOOKS_A_STEP === 0) onStep?.();
-    const stride = bank.strideOf(a, t, factors[g]!);
-    return matchBounds(sliceAt(factors[g]!, stride), bank.thinned(t, stride));
+    return matchBounds(sliceAt(factors[g]!), bank.templates[t]!);
   };
   const rough = promising(bank.paths, look, everywhere);
   const sharp = (t: number, factor: number): number => {
-    const product = productOf(sliceAt(factor, 1), bank.templates[t]!, buffers);
+    const product = productOf(sliceAt(factor), bank.templates[t]!, buffers);
     return product.normA > 0 && product.normB > 0 ? findLag(product, 'modulus', 1).value / Math.sqrt(product.normA * product.normB) : 0;
   };
   return { rough, sharp };
