@@ -2,7 +2,7 @@
 const SEARCH_LIMIT_MS = 120_000;
 
 /** Begins to count when it is first asked. */
-export function searchLimit(limitMs = SEARCH_LIMIT_MS): { readonly endedBy: () => string | null } {
+export function searchLimit(limitMs = SEARCH_LIMIT_MS, now: () => number = () => performance.now()): { readonly endedBy: () => string | null } {
   let began: number | null = null;
-  return { endedBy: () => (performance.now() - (began ??= performance.now()) > limitMs ? 'the time for the search was over' : null) };
+  return { endedBy: () => (now() - (began ??= now()) > limitMs ? 'the time for the search was over' : null) };
 }

@@ -3,6 +3,7 @@ import type { Result } from '@/lib/kernel/result';
 import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
 import type { ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
+import type { Turn } from './turns';
 
 /** What the boiler room asks of a worker thread: `threads/run-sheet.ts` is the one answer outside tests. */
 export interface SheetJob {
@@ -20,6 +21,8 @@ export interface SheetWatch {
   readonly signal: AbortSignal;
   /** Whoever asked for the run wants it no longer: a search ends with what it has, anything before it ends at once. */
   readonly stop?: AbortSignal;
+  /** Its place among the runs under way; one that computes alone needs none. */
+  readonly turn?: Turn;
 }
 
 export type ComputeSheet = (job: SheetJob, watch: SheetWatch) => Promise<Result<{ readonly result: ResultDocument; readonly figures: FiguresByClaim; readonly readings: ReadingsByClaim }, readonly Problem[]>>;

@@ -3,48 +3,19 @@
  * by one and puts results into the cellar. It may die at any moment: what it had is taken up by the
  * next, and done once.
  */
-import { run, type Runner, type TaskList } from 'graphile-worker';
-import { EventEmitter } from 'node:events';
 import { openDatabase, useDatabase, type Database } from '@/db/client';
 import { workerEnv, type WorkerEnv } from '@/lib/env';
 import { TASKS, type TaskName } from '@/lib/jobs/tasks';
 import { createS3Store } from '@/lib/storage/s3-store';
 import { endWithParent } from '@/lib/tools/process';
 import { assertDurable } from './assert-durable';
-import { HANDLERS } from './handlers/index';
 import type { HandlerRoom } from './handlers/handler';
 import { layAsideSpentJobs } from './lay-aside';
 import { openLiveness, type Liveness } from './liveness';
-import { quietLogger } from './log';
+import { report } from './log';
+import { LOOK_EVERY_MS, startPool, startRuns, tasksOf } from './pools';
 import { sweepRunFolders } from './run-folder';
 import { runSheet } from './threads/run-sheet';
-
-/** Runs compete for cores; mail must not wait behind them. */
-const CONCURRENT_RUNS = 2;
-const LOOK_EVERY_MS = 1000;
-
-function tasksOf(names: readonly TaskName[], room: HandlerRoom): TaskList {
-  return Object.fromEntries(
-    names.flatMap((name) => {
-      const handler = HANDLERS[name];
-      // The queue's clock adds a field of its own to what it enqueues.
-      const bare = ({ _cron: _, ...payload }: Record<string, unknown>): unknown => payload;
-      return handler ? [[name, (payload: unknown, helpers: { job: { attempts: number } }) => handler(bare(payload as Record<string, unknown>), room, helpers.job.attempts)]] : [];
-    }),
-  );
-}
-
-async function startPool(database: Database, liveness: Liveness, taskList: TaskList, concurrency: number, crontab = ''): Promise<Runner> {
-  const events = new EventEmitter();
-  const announced: Promise<void>[] = [];
-  events.on('pool:create', ({ workerPool }: { workerPool: { id: string } }) => void announced.push(liveness.announce(workerPool.id)));
-  events.on('job:failed', () => setTimeout(() => void layAsideSpentJobs(database).catch(report), 100).unref());
-  const runner = await run({ pgPool: database.$client, taskList, concurrency, crontab, events: events as never, noHandleSignals: true, pollInterval: LOOK_EVERY_MS, gracefulShutdownAbortTimeout: 500, logger: quietLogger });
-  await Promise.all(announced);
-  return runner;
-}
-
-const report = (error: unknown): void => console.error(JSON.stringify({ level: 'error', at: new Date().toISOString(), where: 'worker', message: error instanceof Error ? error.message : String(error) }));
 
 /** Looks for dead workers and spent jobs until told to stop. */
 function keepLooking(database: Database, liveness: Liveness, signal: AbortSignal): void {
@@ -62,7 +33,7 @@ function keepLooking(database: Database, liveness: Liveness, signal: AbortSignal
 
 async function start(env: WorkerEnv): Promise<() => Promise<void>> {
   const stopping = new AbortController();
-  const database = openDatabase(env.WORKER_DATABASE_URL, { max: 8, application_name: 'counterfoil-worker', onError: report });
+  const database = openDatabase(env.WORKER_DATABASE_URL, { max: 12, application_name: 'counterfoil-worker', onError: report });
   useDatabase(database);
   if (env.NODE_ENV === 'production' && !env.DEMO) await assertDurable(database);
   await sweepRunFolders().catch(report);
@@ -73,9 +44,9 @@ async function start(env: WorkerEnv): Promise<() => Promise<void>> {
   const room: HandlerRoom = { database, store: createS3Store(env), mail: env, compute: runSheet, signal: stopping.signal };
   const others = (Object.keys(TASKS) as TaskName[]).filter((name) => name !== 'run-submission');
   const cron = ['* * * * * deliver-outbox ?jobKey=outbox-sweep&max=1', '17 * * * * clear-uploads ?jobKey=uploads-sweep&max=1'].join('\n');
-  const runners = [await startPool(database, liveness, tasksOf(['run-submission'], room), CONCURRENT_RUNS)];
+  const runners = [await startRuns(database, liveness, room)];
   const otherTasks = tasksOf(others, room);
-  if (Object.keys(otherTasks).length > 0) runners.push(await startPool(database, liveness, otherTasks, 1, cron));
+  if (Object.keys(otherTasks).length > 0) runners.push(await startPool(database, liveness, otherTasks, { concurrency: 1, crontab: cron }));
   keepLooking(database, liveness, stopping.signal);
   return async () => {
     stopping.abort();

@@ -14,7 +14,7 @@ export async function requestRecheck(actor: Actor, recordId: string): Promise<Ou
   return actOnSubmission({ actor, action: 'record.recheck', submissionId: record.submissionId }, async ({ tx, grant, note }) => {
     const row = await findRevision(tx, record.submissionId, record.revision);
     if (!row) return { ok: false, error: NOT_FOUND };
-    const runId = await runRevision(tx, grant, row, 'official');
+    const runId = await runRevision(tx, grant, row, 'recheck');
     note({ recordId, runId });
     return ok({ runId });
   });

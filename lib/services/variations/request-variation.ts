@@ -9,6 +9,7 @@ import { ENGINE_VERSION } from '@/lib/engine/version';
 import type { ReadOtherwise } from '@/lib/explain/read-otherwise';
 import { webEnv } from '@/lib/env';
 import { enqueue } from '@/lib/jobs/enqueue';
+import { urgencyOf } from '@/lib/jobs/urgency';
 import { ok } from '@/lib/kernel/result';
 import { readingsOfClaim } from '@/lib/pipeline/explain/offered-readings';
 import { userIdOf, type Actor } from '@/lib/policy/actor';
@@ -84,6 +85,6 @@ async function askRun(tx: Transaction, grant: SubmissionGrant<'submission.vary'>
     inputsDigest: inputsDigest({ ...(sheet as unknown as Record<string, unknown>), ...(otherwise && { otherwise }) }, files),
     ...(otherwise && { otherwise }),
   });
-  await enqueue(tx, 'run-submission', { runId }, { key: `run:${runId}`, queue: personalQueue(userIdOf(grant.actor) ?? '', webEnv().AUTH_SECRET) });
+  await enqueue(tx, 'run-submission', { runId }, { key: `run:${runId}`, queue: personalQueue(userIdOf(grant.actor) ?? '', webEnv().AUTH_SECRET), urgency: urgencyOf('variation') });
   return runId;
 }

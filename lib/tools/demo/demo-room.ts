@@ -3,6 +3,7 @@ import { openDatabase, useDatabase, type Database } from '@/db/client';
 import { findRun } from '@/db/reads/runs/run';
 import { publishKey } from '@/db/writes/records/enter-record';
 import { signerEnv, webEnv, workerEnv } from '@/lib/env';
+import { nobodyWaits } from '@/lib/jobs/urgency';
 import { signWaiting } from '@/lib/signer/sign-decision';
 import { loadSigningKey } from '@/lib/signer/signing-key';
 import type { Outcome } from '@/lib/services/app-error';
@@ -29,8 +30,9 @@ function openWeb(): Database {
   return web;
 }
 
-/** Beside a running application: its worker measures what stands in the queue, and its signer signs. */
+/** Beside a running application: its worker measures what stands in the queue when no person's run wants the room, and its signer signs. */
 export function openWaitingRoom(): DemoRoom {
+  nobodyWaits();
   const web = openWeb();
   const storeOldResult = () => Promise.reject(new Error('Old results are stored before the site opens.'));
   return { compute: (runId) => untilMeasured(web, runId), storeOldResult, sign: () => Promise.resolve(), close: () => web.$client.end() };

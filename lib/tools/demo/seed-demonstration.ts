@@ -43,7 +43,7 @@ async function takeAllCourses(courses: readonly Course[], room: DemoRoom, people
   if (broken) throw broken.reason;
 }
 
-/** The rest, one after another beside the open site: one of the worker's threads stays free for visitors. */
+/** The rest, one after another beside the open site: whatever a visitor asks goes first. */
 export async function seedTheRest(dataFolder: string, say: Say): Promise<void> {
   const room = openWaitingRoom();
   try {

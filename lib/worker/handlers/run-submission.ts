@@ -14,6 +14,7 @@ import { makeRunFolder } from '../run-folder';
 import { progressTeller } from '../progress-teller';
 import { stepLog } from '../step-log';
 import { watchForStop } from '../stop-watch';
+import type { Turn } from '../turns';
 import type { Handler, HandlerRoom } from './handler';
 
 type RunInputs = NonNullable<Awaited<ReturnType<typeof findRunInputs>>>;
@@ -22,7 +23,22 @@ type RunInputs = NonNullable<Awaited<ReturnType<typeof findRunInputs>>>;
  * One run: inputs from the store, hashes checked, the pipeline in a thread, the result stored once.
  * Killed anywhere on the way, the job is tried again and ends with the same one result.
  */
-export const runSubmission: Handler = async (raw, room, attempt) => {
+export const runSubmission: Handler = async (raw, room, attempt, urgency = 0) => {
+  const turn = room.turns?.enter(urgency);
+  try {
+    await runInTurn(raw, room, { attempt, urgency, turn });
+  } finally {
+    turn?.leave();
+  }
+};
+
+interface Standing {
+  readonly attempt: number;
+  readonly urgency: number;
+  readonly turn: Turn | undefined;
+}
+
+async function runInTurn(raw: unknown, room: HandlerRoom, { attempt, urgency, turn }: Standing): Promise<void> {
   const { runId } = parsePayload('run-submission', raw);
   const run = await findRunInputs(room.database, runId);
   if (!run) throw new Error(`there is no run ${runId}`);
@@ -31,27 +47,28 @@ export const runSubmission: Handler = async (raw, room, attempt) => {
   await startProgress(room.database, { runId, submissionId: run.submissionId, doing: 'fetching the files' }, attempt);
   const folder = await makeRunFolder();
   try {
-    const finding = await compute(room, run, folder);
-    if (finding === null) await endStoppedRun(room.database, run);
-    else if (!room.signal.aborted) await completeRun(room.database, run, finding);
+    const finding = await compute(room, run, { folder, turn });
+    if (finding === null) return await endStoppedRun(room.database, run);
+    if (!room.signal.aborted && !turn?.putOff.aborted) await completeRun(room.database, run, finding);
   } catch (error) {
     if (!room.signal.aborted) throw error;
   } finally {
     await rm(folder, { recursive: true, force: true });
   }
-  // Told to stop is no failure: the run goes back as a new job, with all its tries.
-  if (room.signal.aborted) await enqueue(room.database, 'run-submission', { runId }, { key: `run:${runId}` });
-};
+  // Told to stop or put off is no failure: the run goes back as a new job, with all its tries.
+  const putOff = turn?.putOff.aborted === true;
+  if (room.signal.aborted || putOff) await enqueue(room.database, 'run-submission', { runId }, { key: `run:${runId}`, urgency, ...(putOff && { flags: ['put-off'] }) });
+}
 
 /** Null when whoever asked for the run wanted it no longer and there was no number yet. */
-async function compute(room: HandlerRoom, run: RunInputs, folder: string): Promise<RunFinding | null> {
+async function compute(room: HandlerRoom, run: RunInputs, { folder, turn }: { readonly folder: string; readonly turn: Turn | undefined }): Promise<RunFinding | null> {
   const log = stepLog(() => performance.now());
   log.note('fetching the files');
   const files = await fetchInputs(room.store, run.inputs, folder);
   const watch = watchForStop(room.database, run.id);
   const teller = progressTeller(room.database, { runId: run.id, submissionId: run.submissionId });
   try {
-    const done = await room.compute({ sheet: run.sheet, files, withFigures: true, explain: run.kind !== 'variation', ...(run.otherwise && { otherwise: run.otherwise }) }, { onProgress: (fraction, doing) => (log.note(doing), teller.note(fraction, doing)), signal: room.signal, stop: watch.signal });
+    const done = await room.compute({ sheet: run.sheet, files, withFigures: true, explain: run.kind !== 'variation', ...(run.otherwise && { otherwise: run.otherwise }) }, { onProgress: (fraction, doing) => (log.note(doing), teller.note(fraction, doing)), signal: room.signal, stop: watch.signal, ...(turn && { turn }) });
     return watch.signal.aborted && !done.ok ? null : asFinding(done, log.steps());
   } finally {
     watch.close();

@@ -9,7 +9,8 @@ import { Piscina } from 'piscina';
 import type { Problem } from '@/lib/kernel/problem';
 import { err } from '@/lib/kernel/result';
 import type { ComputeSheet, SheetJob, SheetWatch } from '../compute';
-import { askToEnd, newWishes, searchHasBegun, type ProgressNote, type SheetTask, type StopWishes } from './sheet-task';
+import { askToEnd, askToStepAside, newWishes, searchHasBegun, type SheetTask, type ThreadNote, type Wishes } from './sheet-task';
+import { openTimeLimit } from './time-limit';
 
 export interface ThreadLimits {
   readonly threads: number;
@@ -41,16 +42,19 @@ export function openSheetThreads(limits: ThreadLimits = houseLimits): SheetThrea
   const pool = openPool(limits);
   const run: ComputeSheet = async (job, watch) => {
     const { port1, port2 } = new MessageChannel();
-    port1.on('message', ({ fraction, doing }: ProgressNote) => watch.onProgress(fraction, doing));
-    const limit = AbortSignal.timeout(limits.timeLimitMs);
     const wishes = newWishes();
+    const limit = openTimeLimit(limits.timeLimitMs);
+    const note = followTurn(watch, (aside) => (limit.pause(aside), askToStepAside(wishes, aside)));
+    port1.on('message', note);
     const byHand = endingByHand(watch.stop, wishes);
     const task: SheetTask = { ...job, port: port2, wishes };
+    const ends = [watch.signal, limit.signal, byHand, ...(watch.turn ? [watch.turn.putOff] : [])];
     try {
-      return await pool.run(task, { transferList: [port2], signal: AbortSignal.any([watch.signal, limit, byHand]) });
+      return await pool.run(task, { transferList: [port2], signal: AbortSignal.any(ends) });
     } catch (thrown) {
-      return err([byHand.aborted ? STOPPED : problemOf(thrown, watch, limit, limits)]);
+      return err([byHand.aborted ? STOPPED : problemOf(thrown, watch, limit.signal, limits)]);
     } finally {
+      limit.close();
       port1.close();
     }
   };
@@ -60,8 +64,26 @@ export function openSheetThreads(limits: ThreadLimits = houseLimits): SheetThrea
 /** The run was wanted no longer; nothing of it is kept. */
 export const STOPPED: Problem = { code: 'worker/stopped', where: '', saw: 'a request to stop from whoever asked for the run', expected: 'the run to be let finish', hint: 'Ask for it again when you like.' };
 
+/** Passes on what a thread tells, and its place among the others to it; a run that stands still says so. */
+function followTurn({ turn, onProgress }: SheetWatch, stepAside: (aside: boolean) => void): (note: ThreadNote) => void {
+  let last = { fraction: 0, doing: 'beginning' };
+  let stands = false;
+  turn?.follow((aside) => {
+    stepAside(aside);
+    if (aside !== stands) onProgress(last.fraction, aside ? LETS_OTHERS_PASS : last.doing);
+    stands = aside;
+  });
+  return (note) => {
+    if (note === 'searching') return turn?.searching();
+    last = note;
+    onProgress(note.fraction, note.doing);
+  };
+}
+
+const LETS_OTHERS_PASS = 'waiting while more urgent runs compute';
+
 /** Aborts at once while numbers are still to come; in the search it only leaves word. */
-function endingByHand(stop: AbortSignal | undefined, wishes: StopWishes): AbortSignal {
+function endingByHand(stop: AbortSignal | undefined, wishes: Wishes): AbortSignal {
   const end = new AbortController();
   const asked = (): void => {
     askToEnd(wishes);
@@ -73,7 +95,7 @@ function endingByHand(stop: AbortSignal | undefined, wishes: StopWishes): AbortS
 }
 
 function problemOf(thrown: unknown, watch: SheetWatch, limit: AbortSignal, limits: ThreadLimits): Problem {
-  if (watch.signal.aborted) return { code: 'worker/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' };
+  if (watch.signal.aborted || watch.turn?.putOff.aborted) return { code: 'worker/cancelled', where: '', saw: 'a request to stop', expected: 'the run to be let finish' };
   if (limit.aborted)
     return {
       code: 'worker/time-limit',
@@ -95,5 +117,8 @@ function problemOf(thrown: unknown, watch: SheetWatch, limit: AbortSignal, limit
 
 let shared: SheetThreads | null = null;
 
+/** Runs that a worker may have under way: two compute, the others wait in their middle or in a search. */
+export const RUN_SLOTS = 4;
+
 /** The worker process's own pool, opened at the first run. */
-export const runSheet: ComputeSheet = (job: SheetJob, watch: SheetWatch) => (shared ??= openSheetThreads()).run(job, watch);
+export const runSheet: ComputeSheet = (job: SheetJob, watch: SheetWatch) => (shared ??= openSheetThreads({ ...houseLimits, threads: RUN_SLOTS })).run(job, watch);

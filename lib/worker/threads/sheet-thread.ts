@@ -4,21 +4,28 @@ import { FileRefused, type OpenFile } from '@/lib/formats/open-file';
 import { reproduce } from '@/lib/pipeline/reproduce';
 import { readHdf5 } from '@/lib/threads/read-hdf5';
 import { searchLimit } from '@/lib/threads/search-limit';
-import { endedByHand, type ProgressNote, type SheetTask } from './sheet-task';
+import { beginSearch, endedByHand, stepAside, type SheetTask, type ThreadNote } from './sheet-task';
 
 /**
  * Runs inside a worker thread: one sheet through the whole pipeline. It is given paths, never an
  * environment, a database or a store. Cancelling ends the thread from outside; a search is ended from
- * within, so that the numbers found before it are kept.
+ * within, so that the numbers found before it are kept. Standing aside for more urgent runs is no time of this one's.
  */
 export default async function sheetThread({ sheet, files, withFigures, explain, otherwise, port, wishes }: SheetTask): ReturnType<typeof reproduce> {
-  const limit = searchLimit();
-  const end = { endedBy: () => endedByHand(wishes) ?? limit.endedBy() };
-  const note = (fraction: number, doing: string): void => port.postMessage({ fraction, doing } satisfies ProgressNote);
+  let asideMs = 0;
+  const giveWay = (): void => void (asideMs += stepAside(wishes, () => performance.now()));
+  const say = (note: ThreadNote): void => port.postMessage(note);
+  const tell = onlyNews((fraction, doing) => say({ fraction, doing }));
+  const limit = searchLimit(undefined, () => performance.now() - asideMs);
+  const endedBy = (): string | null => {
+    if (beginSearch(wishes)) say('searching');
+    giveWay();
+    return endedByHand(wishes) ?? limit.endedBy();
+  };
   try {
     return await reproduce(
       { sheetJson: sheet, openFile: openAmong(files), readHdf5 },
-      { withFigures, onProgress: onlyNews(note), cancelled: () => false, digest: sha256, ...(otherwise && { otherwise }), ...(explain ? { explain: end } : {}) },
+      { withFigures, onProgress: (fraction, doing) => (giveWay(), tell(fraction, doing)), cancelled: () => (giveWay(), false), digest: sha256, ...(otherwise && { otherwise }), ...(explain ? { explain: { endedBy } } : {}) },
     );
   } finally {
     port.close();

@@ -3,6 +3,7 @@ import { join } from 'node:path';
 import { afterAll, describe, expect, it } from 'vitest';
 import type { SheetJob } from '@/lib/worker/compute';
 import { houseLimits, openSheetThreads } from '@/lib/worker/threads/run-sheet';
+import { Turns } from '@/lib/worker/turns';
 
 const folder = join(process.cwd(), 'content', 'specimens', 'radiated-energy');
 const sheet = JSON.parse(readFileSync(join(folder, 'claim.json'), 'utf8')) as unknown;
@@ -36,6 +37,30 @@ describe('a sheet in a thread', () => {
     const run = await threads.run(job, { onProgress: () => stop.abort(), signal: stop.signal });
     expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/cancelled']);
     expect((await threads.run(job, quiet)).ok).toBe(true);
+  });
+});
+
+describe('a sheet whose turn it is not', () => {
+  it('stands still until others have passed, says so, and ends as if nothing had been', async () => {
+    const turns = new Turns({ slots: 2, cores: 1 });
+    const [mine, others] = [turns.enter(1), turns.enter(0)];
+    const told: string[] = [];
+    const running = threads.run(job, { ...quiet, turn: mine, onProgress: (_, doing) => told.push(doing) });
+    const elsewhere = openSheetThreads({ ...houseLimits, threads: 1 });
+    const alone = await elsewhere.run(job, quiet);
+    await elsewhere.close();
+    const whileAside = [...told];
+    others.leave();
+    const there = await running;
+    expect(whileAside).toEqual(['waiting while more urgent runs compute']);
+    expect(there.ok && alone.ok && there.value.result).toEqual(alone.ok && alone.value.result);
+  });
+  it('can be ended while it stands still', async () => {
+    const turns = new Turns({ slots: 2, cores: 1 });
+    const [mine, stop] = [turns.enter(1), new AbortController()];
+    turns.enter(0);
+    const run = await threads.run(job, { ...quiet, turn: mine, signal: stop.signal, onProgress: () => setImmediate(() => stop.abort()) });
+    expect(run.ok ? [] : run.error.map(({ code }) => code)).toEqual(['worker/cancelled']);
   });
 });
 
