@@ -4,6 +4,7 @@ import { channelsOf, normSquared } from './channels';
 import { DEFAULT_GOAL, frequencyNodes } from './frequency-panels';
 import { frequencySource } from './frequency-source';
 import { alignedResidual, bestMatch, climbMass, looksAt } from './best-match';
+import { massSights } from './mass-sights';
 import { modeGram, type Sight } from './mode-gram';
 import { nodesFor } from './shared-nodes';
 import { sightMatcher } from './sight-matcher';
@@ -80,7 +81,7 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
     name: 'B',
     gram: (side, band) => gram(side, band, knobs),
     grams: (side, band, sights) => grams(side, band, sights, knobs),
-    sights: (request) => sightMatcher(request, source, knobs),
+    sights: (request) => (request.mass === undefined ? sightMatcher(request, source, knobs) : massSights(request, request.mass, source, knobs)),
     powerOf: (amplitude, band) => closedFormPower(amplitude, band, knobs.quadrature),
     modePower: (side, band) => modePower(side, band, knobs),
     overlap,
