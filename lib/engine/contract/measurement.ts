@@ -17,6 +17,8 @@ export interface BudgetLine {
   readonly degreesOfFreedom?: number;
   /** How it is spread, where that differs from what is usual for its id: a bound is a rectangle whatever it bounds. */
   readonly shape?: 'rectangular' | 'normal';
+  /** The number itself with each of the line's knobs turned; for what is made of several such numbers, never printed. */
+  readonly turned?: { readonly values: readonly number[]; /** Where those are other knobs than the ones that make u. */ readonly note?: string };
   /** Part of the variance of all that is known; null where u is. */
   readonly share?: number | null;
 }

@@ -21,15 +21,11 @@ export interface RunScalar {
   readonly B: number;
   /** Lines that make U. */
   readonly computation: readonly BudgetLine[];
-  /** The number with each knob of a line turned, by the line's id: what it does to all runs alike may cancel. */
-  readonly turned?: Turned;
   readonly coverage: readonly BudgetLine[];
   readonly findings: readonly Finding[];
   readonly settings: readonly UsedSetting[];
   readonly assumed: readonly string[];
 }
-
-export type Turned = ReadonlyMap<string, readonly number[]>;
 
 /** Gives one number of any run. */
 export interface Meter {
@@ -70,23 +66,30 @@ export function meterOfQuantity(quantity: Quantity, request: MeasureRequest, wat
 
 export type PeakNumber = 'amplitude' | 'phase';
 
-/** Route A with one knob turned at a time, by the id of the budget's line. */
-function turnedOf({ tones, peakTones, startM }: FollowedRun, endM: number, which: PeakNumber): Turned {
-  const by = (tone: Tone, peakTone: Tone, order: 6 | 8, peak: PeakBy): number => atPeakOnSamples({ tone, peakTone, startM, endM }, order, peak)[which];
-  return new Map<string, readonly number[]>([
-    ['E01', [by(tones.A, peakTones.A, 6, 'polynomial'), by(tones.A, peakTones.A, 8, 'shorter polynomial')]],
-    ...(tones.floor === null ? [] : ([['E02', [by(tones.coarse, peakTones.coarse, 8, 'polynomial')]]] as const)),
-  ]);
+interface Turned {
+  readonly reading: readonly number[];
+  readonly integration: readonly number[];
 }
 
-function computationOf({ tones, peakTones, waveform }: FollowedRun, here: AtPeak, turned: Turned, which: PeakNumber): BudgetLine[] {
+/** Route A with one knob turned at a time. */
+function turnedOf({ tones, peakTones, startM }: FollowedRun, endM: number, which: PeakNumber): Turned {
+  const by = (tone: Tone, peakTone: Tone, order: 6 | 8, peak: PeakBy): number => atPeakOnSamples({ tone, peakTone, startM, endM }, order, peak)[which];
+  return {
+    reading: [by(tones.A, peakTones.A, 6, 'polynomial'), by(tones.A, peakTones.A, 8, 'shorter polynomial')],
+    integration: tones.floor === null ? [] : [by(tones.coarse, peakTones.coarse, 8, 'polynomial')],
+  };
+}
+
+function computationOf(run: FollowedRun, here: AtPeak, endM: number, which: PeakNumber): BudgetLine[] {
+  const { tones, peakTones, waveform } = run;
+  const { reading, integration: integrated } = turnedOf(run, endM, which);
   const value = here[which];
-  const size = (id: string): number => Math.max(turned.get(id)!.reduce((sum, other) => sum + Math.abs(other - value), 0) / ROOT3, LEAST * Math.abs(value));
-  const integration: BudgetLine[] = tones.floor === null ? [] : [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: size('E02'), note: 'Interpolation of order 8 against 6 and half the points.' }];
+  const size = (turned: readonly number[]): number => Math.max(turned.reduce((sum, other) => sum + Math.abs(other - value), 0) / ROOT3, LEAST * Math.abs(value));
+  const integration: BudgetLine[] = tones.floor === null ? [] : [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: size(integrated), turned: { values: integrated }, note: 'Interpolation of order 8 against 6 and half the points.' }];
   const digits = waveform.significantDigits;
   const slip = digits === null ? 0 : relativeSlip(digits);
   return [
-    { component: 'Interpolation and time of the peak', id: 'E01', group: 'computation', u: size('E01'), note: 'Local polynomials of order 8 against 6, in the reading and in the peak; changes added, half-width over √3.' },
+    { component: 'Interpolation and time of the peak', id: 'E01', group: 'computation', u: size(reading), turned: { values: reading }, note: 'Local polynomials of order 8 against 6, in the reading and in the peak; changes added, half-width over √3.' },
     ...integration,
     { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: which === 'amplitude' ? slip * Math.abs(value) : Math.hypot(Math.SQRT2 * slip, turnOfPeak(tones.A, peakTones.A, here.timeM, slip)), note: digits === null ? 'Binary doubles: nothing was printed.' : `${digits} significant digits in the file.` },
   ];
@@ -131,8 +134,7 @@ export function meterAtPeak(which: PeakNumber, followed: Followed, request: Meas
       );
       const looks = request.routeAOnly === true;
       if (looks) return { A: A[which], B: Number.NaN, computation: [], coverage: [], findings: runFindings(run, followed), settings, assumed };
-      const turned = turnedOf(run, endM, which);
-      return { A: A[which], B: B()[which], computation: computationOf(run, A, turned, which), turned, coverage: floorLines(floor, A[which], (other) => again(waveform, { integrationFloor: other })), findings: runFindings(run, followed), settings, assumed };
+      return { A: A[which], B: B()[which], computation: computationOf(run, A, endM, which), coverage: floorLines(floor, A[which], (other) => again(waveform, { integrationFloor: other })), findings: runFindings(run, followed), settings, assumed };
     },
     looked: (waveform) => again(waveform),
   };

@@ -15,19 +15,31 @@ export interface Made {
   readonly moves: readonly number[];
 }
 
-/** What a line's knobs do to the result when each is turned in all runs at once; null where a run does not tell. */
-function turnedTogether({ scalars, from, value }: Made, id: string): number | null {
-  const of = scalars.map(({ turned }) => turned?.get(id));
+const keyOf = ({ id, component }: BudgetLine): string => id + component;
+
+/** What one knob does to the result when it is turned in all runs at once, beside what of it the runs do not share. */
+function oneKnob({ scalars, from, value, moves }: Made, turned: readonly number[]): number {
+  const shifts = turned.map((x, i) => x - scalars[i]!.A);
+  const common = shifts.reduce((sum, shift) => sum + shift, 0) / shifts.length;
+  return Math.hypot(from(turned) - value, ...shifts.map((shift, i) => moves[i]! * (shift - common)));
+}
+
+/** What a line's knobs do to the result; null where a run does not tell. */
+function turnedTogether(made: Made, key: string): number | null {
+  const { scalars } = made;
+  const of = scalars.map(({ computation }) => computation.find((line) => keyOf(line) === key)?.turned?.values);
   const knobs = of[0]?.length ?? 0;
   if (knobs === 0 || of.some((values) => values?.length !== knobs)) return null;
   let sum = 0;
-  for (let k = 0; k < knobs; k++) sum += Math.abs(from(of.map((values) => values![k]!)) - value);
+  for (let k = 0; k < knobs; k++) sum += oneKnob(made, of.map((values) => values![k]!));
   return sum / ROOT3;
 }
 
 /**
- * Lines that make U of a number that is made of several runs' numbers. Where it is not known what a knob does to all runs
- * together, sizes are added; printed digits of different files are independent.
+ * Lines that make U of a number that is made of several runs' numbers. A knob is turned in all runs at once, since what it does to
+ * them is mostly common; by how much it moves one run more than the mean is carried as independent, since a change that happens
+ * to fall like the runs' own differences would move nothing. Where a run does not tell, sizes are added. Printed digits of
+ * different files are independent.
  * Shape:  one line for each that any run has, in the order of the first.
  * Units:  those of the result.
  * Error:  errs on the large side.
@@ -37,15 +49,18 @@ function turnedTogether({ scalars, from, value }: Made, id: string): number | nu
 export function propagatedLines(made: Made, how: string): BudgetLine[] {
   const { scalars, value, moves } = made;
   const keys = new Map<string, BudgetLine>();
-  for (const { computation } of scalars) for (const line of computation) if (!keys.has(line.id + line.component)) keys.set(line.id + line.component, line);
-  return [...keys].map(([key, { component, id, group, note }]): BudgetLine => {
+  for (const { computation } of scalars) for (const line of computation) if (!keys.has(keyOf(line))) keys.set(keyOf(line), line);
+  return [...keys].map(([key, { component, id, group, note, turned }]): BudgetLine => {
     const sizes = scalars.map(({ computation }, i) => {
-      const own = computation.find((line) => line.id + line.component === key);
+      const own = computation.find((line) => keyOf(line) === key);
       return own === undefined ? 0 : Math.abs(moves[i]!) * (own.u ?? Number.NaN);
     });
-    const together = turnedTogether(made, id) ?? sizes.reduce((sum, size) => sum + size, 0);
-    const u = id === 'rounding' ? Math.hypot(...sizes) : Math.max(together, id === 'E01' ? LEAST * Math.abs(value) : 0);
-    return { component, id, group, u, note: `${note} ${how}` };
+    const turnedAll = turnedTogether(made, key);
+    const together = turnedAll ?? sizes.reduce((sum, size) => sum + size, 0);
+    // What doubles cut off differs from run to run, whatever cancels.
+    const least = id === 'E01' ? Math.hypot(LEAST * value, ...moves.map((move, i) => move * LEAST * scalars[i]!.A)) : 0;
+    const u = id === 'rounding' ? Math.hypot(...sizes) : Math.max(together, least);
+    return { component, id, group, u, note: `${turnedAll === null ? note : `${turned?.note ?? note} Turned in all runs at once.`} ${how}` };
   });
 }
 

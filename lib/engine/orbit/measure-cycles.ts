@@ -4,6 +4,7 @@ import type { MeasureRequest, Watch } from '../contract/quantity';
 import { relativeSlip } from '../radiation/input-rounding';
 import { polarOf } from '../series/polar';
 import { isFinding, measureTones, stop, type At, type ToneRecipe } from '../tones/measure-tones';
+import type { PeakBy } from '../tones/peak';
 import { toneSampling } from '../tones/tone-findings';
 import { stretchOf, toneName } from '../tones/tone';
 import { usedSettings } from '../tones/used-rows';
@@ -20,12 +21,15 @@ const countA = ({ tones }: OrbitPoint, stretch: Stretch): number => Math.abs(adv
 
 function computation(point: OrbitPoint, value: number): BudgetLine[] {
   const stretch = found(point);
-  const other = stretchByRouteA(point, whole, 'parabola');
-  const byPeak = isFinding(other) ? value : countA(point, other);
+  const byPeakOf = (by: PeakBy): number => {
+    const other = stretchByRouteA(point, whole, by);
+    return isFinding(other) ? value : countA(point, other);
+  };
+  const byPeak = byPeakOf('parabola');
   const byOrder = Math.abs(advanceOnSamples(point.tones.A, stretch, 6)) / TURN;
   const digits = point.waveform.significantDigits;
   return [
-    { component: 'Phase at the edges of the window', id: 'E01', group: 'computation', u: Math.max((Math.abs(byPeak - value) + Math.abs(byOrder - value)) / ROOT3, LEAST * value), note: 'Interpolation of order 8 against 6, peak by a polynomial against the five-sample parabola; changes added, half-width over √3.' },
+    { component: 'Phase at the edges of the window', id: 'E01', group: 'computation', u: Math.max((Math.abs(byPeak - value) + Math.abs(byOrder - value)) / ROOT3, LEAST * value), turned: { values: [byPeakOf('shorter polynomial'), byOrder], note: 'Interpolation of order 8 against 6, peak by a polynomial against a shorter one; changes added, half-width over √3.' }, note: 'Interpolation of order 8 against 6, peak by a polynomial against the five-sample parabola; changes added, half-width over √3.' },
     ...integrationLine(point, value, (tone) => Math.abs(advanceOnSamples(tone, stretch)) / TURN),
     { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: digits === null ? 0 : (Math.SQRT2 * relativeSlip(digits)) / TURN, note: digits === null ? 'Binary doubles: nothing was printed.' : `${digits} significant digits in the file, at either edge.` },
   ];

@@ -5,6 +5,7 @@ import type { MeasureRequest, Watch } from '../contract/quantity';
 import { relativeSlip } from '../radiation/input-rounding';
 import { isFinding, measureTones, stop, type At, type ToneRecipe } from '../tones/measure-tones';
 import { short } from '../findings/spelt';
+import { shorterPeak, type PeakBy } from '../tones/peak';
 import { toneSampling } from '../tones/tone-findings';
 import { toneName } from '../tones/tone';
 import { usedSettings } from '../tones/used-rows';
@@ -41,15 +42,16 @@ function rounding(point: OrbitPoint, value: number): BudgetLine {
 function computation(point: OrbitPoint, value: number): BudgetLine[] {
   const stretch = found(point);
   const tone = point.tones.A;
-  const other = stretchByRouteA(point, margins, 'parabola');
-  const turned = [
-    isFinding(other) ? value : eccentricityOf(smoothedOnSamples(tone, other)),
-    eccentricityOf(smoothedOnSamples(tone, stretch, { ...houseRule, order: 6 })),
-  ];
-  const stencil = Math.abs(eccentricityOf(smoothedOnSamples(tone, stretch, { ...houseRule, stencil: 9 })) - value);
+  const byPeakOf = (by: PeakBy): number => {
+    const other = stretchByRouteA(point, margins, by);
+    return isFinding(other) ? value : eccentricityOf(smoothedOnSamples(tone, other));
+  };
+  const byOrder = eccentricityOf(smoothedOnSamples(tone, stretch, { ...houseRule, order: 6 }));
+  const turned = [byPeakOf('parabola'), byOrder];
+  const stencil = eccentricityOf(smoothedOnSamples(tone, stretch, { ...houseRule, stencil: 9 }));
   return [
-    { component: 'Fit and mean over the window', id: 'E01', group: 'computation', u: Math.max(turned.reduce((sum, x) => sum + Math.abs(x - value), 0) / ROOT3, LEAST), note: 'End weights of order 8 against 6, peak by a polynomial against the five-sample parabola; changes added, half-width over √3.' },
-    { component: 'Differentiation', id: 'E02', group: 'computation', u: Math.max(stencil / ROOT3, LEAST), note: '13-point against 9-point differences.' },
+    { component: 'Fit and mean over the window', id: 'E01', group: 'computation', u: Math.max(turned.reduce((sum, x) => sum + Math.abs(x - value), 0) / ROOT3, LEAST), turned: { values: [byPeakOf('shorter polynomial'), byOrder], note: shorterPeak }, note: 'End weights of order 8 against 6, peak by a polynomial against the five-sample parabola; changes added, half-width over √3.' },
+    { component: 'Differentiation', id: 'E02', group: 'computation', u: Math.max(Math.abs(stencil - value) / ROOT3, LEAST), turned: { values: [stencil] }, note: '13-point against 9-point differences.' },
     ...integrationLine(point, value, (coarse) => eccentricityOf(smoothedOnSamples(coarse, stretch))),
     rounding(point, value),
   ];

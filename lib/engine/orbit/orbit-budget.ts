@@ -13,7 +13,8 @@ type Read = (tone: Tone) => number;
 /** E02: H from news or ψ4 on half the points, by interpolation of order 6. */
 export function integrationLine({ tones }: OrbitPoint, value: number, read: Read): BudgetLine[] {
   if (tones.floor === null) return [];
-  return [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: Math.max(Math.abs(read(tones.coarse) - value) / ROOT3, LEAST * Math.abs(value)), note: 'Interpolation of order 8 against 6 and half the points.' }];
+  const turned = read(tones.coarse);
+  return [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: Math.max(Math.abs(turned - value) / ROOT3, LEAST * Math.abs(value)), turned: { values: [turned] }, note: 'Interpolation of order 8 against 6 and half the points.' }];
 }
 
 /** E08: the floor times 0.7 and 1.4. */

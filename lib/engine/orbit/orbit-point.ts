@@ -13,7 +13,7 @@ import type { Waveform } from '../contract/waveform';
 import { defaultFloor } from '../radiation/integration-floor';
 import { radiationRecord, upTo, upToWords, type RadiationRecord } from '../radiation/radiation-record';
 import { stop, type At } from '../tones/measure-tones';
-import { peakOnSamples, peakOnSplines } from '../tones/peak';
+import { peakOnSamples, peakOnSplines, type PeakBy } from '../tones/peak';
 import { isIntegrated, strainTones, type StrainTones } from '../tones/strain-tone';
 import { toneName } from '../tones/tone';
 import { floorRows, highestRows, mirrorRows, type UsedRow } from '../tones/used-rows';
@@ -110,7 +110,7 @@ export function stretchFrom(point: OrbitPoint, { afterStart, beforePeak }: Margi
   return stop('engine/no-signal', name, `The window from ${shown(from)} to ${shown(to)} M holds ${inside} samples of ${name}, which runs from ${shown(first)} to ${shown(last)} M.`, 'Declare a window inside the record, on its own times, or supply a longer one.');
 }
 
-export const stretchByRouteA = (point: OrbitPoint, margins: Margins, by: 'polynomial' | 'parabola' = 'polynomial'): Stretch | Finding =>
+export const stretchByRouteA = (point: OrbitPoint, margins: Margins, by: PeakBy = 'polynomial'): Stretch | Finding =>
   stretchFrom(point, margins, point.declaredWindow === null ? peakOnSamples(point.tones.A, by) : null);
 
 export const stretchByRouteB = (point: OrbitPoint, margins: Margins): Stretch | Finding =>

@@ -15,6 +15,8 @@ export interface ComputationUncertainty {
   readonly stencil: number;
   /** Zero for binary doubles: nothing was printed. */
   readonly rounding: number;
+  /** The value itself with either knob turned; none where a turned route gives no number. */
+  readonly turned: { readonly quadrature: readonly number[]; readonly stencil: readonly number[] };
 }
 
 const apart = (p: Outcome, q: Outcome | null): number => (q === null ? Number.NaN : Math.hypot(...p.vector.map((x, i) => x - (q.vector[i] ?? Number.NaN))));
@@ -37,12 +39,15 @@ export interface Measuring {
  */
 export function computationUncertainty({ recipe, point, store, digits }: Measuring, here: Outcome): ComputationUncertainty {
   const least = LEAST * Math.hypot(...here.vector);
-  const moved = (turned: Turned): number => Math.max(apart(here, recipe.byRouteA(point, store, turned)) / ROOT3, least);
+  const moved = (found: Outcome | null): number => Math.max(apart(here, found) / ROOT3, least);
   const takenAsItStands = point.record.variable === 'news' && !recipe.withStrain;
+  const [byOrder, byStencil] = [recipe.byRouteA(point, store, { ...house, order: 6 }), takenAsItStands ? here : recipe.byRouteA(point, store, { ...house, coarse: true })];
+  const valueOf = (found: Outcome | null): readonly number[] => (found === null ? [] : [found.value]);
   return {
-    quadrature: moved({ ...house, order: 6 }),
-    stencil: takenAsItStands ? 0 : moved({ ...house, coarse: true }),
+    quadrature: moved(byOrder),
+    stencil: takenAsItStands ? 0 : moved(byStencil),
     rounding: recipe.rounding(point, store, digits, here),
+    turned: { quadrature: valueOf(byOrder), stencil: valueOf(byStencil) },
   };
 }
 
@@ -91,16 +96,17 @@ export function modesLine(shares: readonly EllShare[], { noun, couplesEll }: Pic
   return { ...base, u: rest / ROOT3, note: `The ${noun} falls to ${Number((100 * ratio).toPrecision(2))} % from ℓ = ${from.l} to ${last.l}; the rest of that series above ℓ = ${last.l}, one-sided.` };
 }
 
-function computationLines({ recipe, point, digits }: Measuring, { quadrature, stencil, rounding }: ComputationUncertainty): BudgetLine[] {
+function computationLines({ recipe, point, digits }: Measuring, { quadrature, stencil, rounding, turned }: ComputationUncertainty): BudgetLine[] {
   const { variable } = point.record;
   const integrates = divisionsTo(variable, recipe.withStrain) > 0;
   return [
-    { component: 'Quadrature over time', id: 'E01', group: 'computation', u: quadrature, note: 'Local polynomials of order 8 against 6; half-width over √3.' },
+    { component: 'Quadrature over time', id: 'E01', group: 'computation', u: quadrature, turned: { values: turned.quadrature }, note: 'Local polynomials of order 8 against 6; half-width over √3.' },
     {
       component: integrates ? 'Integration in frequency' : 'Differentiation',
       id: 'E02',
       group: 'computation',
       u: stencil,
+      turned: { values: turned.stencil },
       note: integrates ? 'Interpolation of order 8 against 6 and half the points.' : variable === 'news' ? 'News is taken as it stands.' : '13-point against 9-point differences.',
     },
     {

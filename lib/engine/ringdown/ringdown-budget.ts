@@ -1,6 +1,6 @@
 import { LEAST, ROOT3 } from '../budget/half-width';
 import type { BudgetLine } from '../contract/measurement';
-import { peakOnSamples } from '../tones/peak';
+import { peakOnSamples, shorterPeak, type PeakBy } from '../tones/peak';
 import { strainTones } from '../tones/strain-tone';
 import { lineOnSamples, slopeScatter, type RingdownLine } from './line-on-samples';
 import { fitWindow, type FitWindow, type RingdownPoint } from './ringdown-point';
@@ -13,8 +13,8 @@ export type Read = (line: RingdownLine) => number;
 /** E02: H from news or ψ4 on half the points, by interpolation of order 6. */
 function integrationLine({ tones }: RingdownPoint, { from, to }: FitWindow, value: number, read: Read): BudgetLine[] {
   if (tones.floor === null) return [];
-  const moved = Math.abs(read(lineOnSamples(tones.coarse, from, to)) - value);
-  return [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: Math.max(moved / ROOT3, LEAST * Math.abs(value)), note: 'Interpolation of order 8 against 6 and half the points.' }];
+  const turned = read(lineOnSamples(tones.coarse, from, to));
+  return [{ component: 'Integration in frequency', id: 'E02', group: 'computation', u: Math.max(Math.abs(turned - value) / ROOT3, LEAST * Math.abs(value)), turned: { values: [turned] }, note: 'Interpolation of order 8 against 6 and half the points.' }];
 }
 
 /** E08: the floor times 0.7 and 1.4. */
@@ -38,14 +38,17 @@ function floorLine({ tones, record, settings }: RingdownPoint, { from, to }: Fit
 export function ringdownComputation(point: RingdownPoint, window: FitWindow, value: number, read: Read): BudgetLine[] {
   const { tones, peakTones, scale } = point;
   const tone = tones.A;
-  const other = fitWindow(point, peakOnSamples(peakTones.A, 'parabola'));
-  const byPeak = 'code' in other ? value : read(lineOnSamples(tone, other.from, other.to));
+  const byPeakOf = (by: PeakBy): number => {
+    const other = fitWindow(point, peakOnSamples(peakTones.A, by));
+    return 'code' in other ? value : read(lineOnSamples(tone, other.from, other.to));
+  };
+  const byPeak = byPeakOf('parabola');
   const byOrder = read(lineOnSamples(tone, window.from, window.to, 6));
   const moved = Math.abs(byPeak - value) + Math.abs(byOrder - value);
   const digits = point.completed.waveform.significantDigits;
   const slip = digits === null ? 0 : (0.5 * 10 ** (1 - digits)) / ROOT3;
   return [
-    { component: 'Sum over the window and time of the peak', id: 'E01', group: 'computation', u: Math.max(moved / ROOT3, LEAST * Math.abs(value)), note: 'End weights of order 8 against 6, peak by a polynomial against the five-sample parabola; changes added, half-width over √3.' },
+    { component: 'Sum over the window and time of the peak', id: 'E01', group: 'computation', u: Math.max(moved / ROOT3, LEAST * Math.abs(value)), turned: { values: [byPeakOf('shorter polynomial'), byOrder], note: shorterPeak }, note: 'End weights of order 8 against 6, peak by a polynomial against the five-sample parabola; changes added, half-width over √3.' },
     ...integrationLine(point, window, value, read),
     { component: 'Rounding of the input', id: 'rounding', group: 'computation', u: scale * slopeScatter(tone, window.from, window.to, slip), note: digits === null ? 'Binary doubles: nothing was printed.' : `${digits} significant digits in the file.` },
   ];

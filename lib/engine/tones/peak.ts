@@ -65,6 +65,9 @@ function parabolaVertex(axis: Float64Array, values: Float64Array, i: number): nu
 /** By a local polynomial of order 8, one of order 6, or the parabola through five samples. */
 export type PeakBy = 'polynomial' | 'shorter polynomial' | 'parabola';
 
+/** How a number made of several runs turns its knobs: the parabola's own error differs from run to run by more than is asked. */
+export const shorterPeak = 'End weights of order 8 against 6, peak by a polynomial against a shorter one; changes added, half-width over √3.';
+
 /**
  * Route A: time of the largest |H|, where the local polynomial of |H|² has slope zero; by the
  * five-sample parabola of rule 2.10 when that is asked for.
