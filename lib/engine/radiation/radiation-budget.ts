@@ -2,7 +2,7 @@ import { LEAST, ROOT3 } from '../budget/half-width';
 import { expandedOf } from '../budget/total';
 import type { BudgetLine } from '../contract/measurement';
 import type { PreparedPoint } from './prepare-radiated';
-import { house, type EllShare, type Outcome, type RadiationRecipe, type SampledStore, type Turned } from './radiation-recipe';
+import { house, type EllShare, type Outcome, type RadiationRecipe, type SampledStore } from './radiation-recipe';
 import { divisionsTo } from './radiation-record';
 import type { RadiationSettings } from './radiation-settings';
 
