@@ -5,7 +5,7 @@ import { matchRequest } from './match-recipe';
 import { sightMaximise, SIGHT_FLOOR } from './mode-content-recipe';
 import type { Evaluated, Recipe, RouteKit } from './recipe';
 import { inclinationFigure } from './sight-figures';
-import { settledMatch, sightProblem, type SightProblem } from './sight-problem';
+import { boundRemarks, keptProblem, placedAgain, settledMatch, sightProblem, type SightProblem } from './sight-problem';
 import { leastMatch, type Range } from './sight-statistics';
 import { sightStops } from './sight-stops';
 
@@ -17,10 +17,10 @@ function rangeOf(point: DetectorPoint): Range {
   return { inclinationRad: point.declared.inclinationRad ?? null, azimuthRad: point.declared.azimuthRad ?? null };
 }
 
-function problemOf({ route }: RouteKit, request: PointRequest): { problem: SightProblem; range: Range } {
+function problemOf(kit: RouteKit, request: PointRequest): { problem: SightProblem; range: Range } {
   const point = detectorPoint(request);
   const range = rangeOf(point);
-  return { problem: sightProblem(route, point, point.b ?? point.a, range.inclinationRad), range };
+  return { problem: keptProblem(kit, request, () => sightProblem(kit, point, point.b ?? point.a, range.inclinationRad)), range };
 }
 
 /** (m₁χ₁ + m₂χ₂)/M along the orbital angular momentum; null where a spin or the mass ratio is not known. */
@@ -43,7 +43,9 @@ export const degeneracyRecipe: Recipe = {
   }),
   evaluate: (kit, request): Evaluated => {
     const { problem, range } = problemOf(kit, request);
-    const { sight, match } = leastMatch(problem, range);
+    const least = leastMatch(problem, range);
+    const { sight } = least;
+    const match = placedAgain(problem, sight, least.match);
     const value = settledMatch(kit.route, problem.request, sight, match);
     const point = detectorPoint(request);
     const place = hasModes(point) ? sight : { inclinationRad: null, azimuthRad: null };
@@ -53,7 +55,7 @@ export const degeneracyRecipe: Recipe = {
       chiEffA: effectiveSpin(request.a.given.binary, request.declared),
       chiEffB: effectiveSpin((request.b ?? request.a).given.binary, request.declared),
     };
-    return { value, components, sights: [{ sight, share: 1, match }] };
+    return { value, components, sights: [{ sight, share: 1, match }], ...boundRemarks([match]) };
   },
   again: (kit, request, { sights = [] }) => {
     const [only] = sights;

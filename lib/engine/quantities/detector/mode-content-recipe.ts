@@ -12,7 +12,7 @@ import { powerInResponse } from './loudness';
 import { matchRequest } from './match-recipe';
 import { ROUNDING_FLOOR, type Evaluated, type Recipe, type RouteKit } from './recipe';
 import { azimuthFigure } from './sight-figures';
-import { settledMatch, sightProblem, type SightProblem } from './sight-problem';
+import { boundRemarks, checkedSights, keptProblem, placedAgain, settledMatch, sightProblem, type SightProblem } from './sight-problem';
 import { leastMatch, meanMatch, meanOf, type Range } from './sight-statistics';
 import { sightStops } from './sight-stops';
 
@@ -45,10 +45,10 @@ const rangeOf = ({ declared }: DetectorPoint): Range => {
   return { inclinationRad: averaged ? null : (declared.inclinationRad ?? houseValues.inclinationRad), azimuthRad: declared.azimuthRad ?? null };
 };
 
-function problemOf({ route }: RouteKit, request: PointRequest): { problem: SightProblem; range: Range } {
+function problemOf(kit: RouteKit, request: PointRequest): { problem: SightProblem; range: Range } {
   const point = detectorPoint(request);
   const range = rangeOf(point);
-  return { problem: sightProblem(route, point, quadrupoleOf(point.a), range.inclinationRad), range };
+  return { problem: keptProblem(kit, request, () => sightProblem(kit, point, quadrupoleOf(point.a), range.inclinationRad)), range };
 }
 
 /** ρ²_ℓm/ρ² along the line of sight at azimuth 0. */
@@ -93,18 +93,26 @@ export const modeContentRecipe: Recipe = {
     const statistic = statisticOf(request.declared);
     if (statistic !== 'minimum') {
       const { sights, value, doubt } = meanMatch(problem, range, statistic);
-      return { value, sights, doubt };
+      const { checked, apart } = checkedSights(problem, sights);
+      return { value, sights, checked, doubt: doubt + apart, ...boundRemarks(sights.map(({ match }) => match)) };
     }
-    const { sight, match } = leastMatch(problem, range);
+    const least = leastMatch(problem, range);
+    const { sight } = least;
+    const match = placedAgain(problem, sight, least.match);
     const value = settledMatch(kit.route, problem.request, sight, match);
-    return { value, components: { azimuthRad: sight.azimuthRad }, sights: [{ sight, share: 1, match }] };
+    return { value, components: { azimuthRad: sight.azimuthRad }, sights: [{ sight, share: 1, match }], ...boundRemarks([match]) };
   },
-  again: (kit, request, { sights = [] }) => {
+  again: (kit, request, { sights = [], checked = [] }) => {
     const statistic = statisticOf(request.declared);
     const [only] = sights;
+    const point = detectorPoint(request);
+    const asked = { ...matchRequest(point), b: quadrupoleOf(point.a) };
+    if (checked.length > 0) {
+      const moved = checked.map(({ sight, match }) => settledMatch(kit.route, asked, sight, match) - match.match);
+      const mean = moved.reduce((sum, by) => sum + by, 0) / moved.length;
+      return meanOf(sights.map((one) => ({ ...one, match: { ...one.match, match: one.match.match + mean } })), statistic === 'minimum' ? 'mean' : statistic);
+    }
     if (statistic === 'minimum') {
-      const point = detectorPoint(request);
-      const asked = { ...matchRequest(point), b: quadrupoleOf(point.a) };
       return only === undefined ? Number.NaN : settledMatch(kit.route, asked, only.sight, only.match);
     }
     const { problem } = problemOf(kit, request);

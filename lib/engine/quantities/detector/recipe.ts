@@ -32,6 +32,8 @@ export interface Evaluated {
   readonly roots?: readonly number[];
   /** Lines of sight that make the value, with their shares, and where b was left for each. */
   readonly sights?: readonly { readonly sight: Sight; readonly share: number; readonly match: SightMatch }[];
+  /** Of many sights, those that were searched once more by themselves: the error bar asks for these. */
+  readonly checked?: readonly { readonly sight: Sight; readonly match: SightMatch }[];
   /** Place in the list of the template that fits best. */
   readonly bestTemplate?: number;
   /** What a fraction was read off. */

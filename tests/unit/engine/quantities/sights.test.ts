@@ -101,7 +101,7 @@ function best(route: DetectorRoute, declared: DeclaredSettings, inclinationRad: 
   const a = conditionWaveform(full, 'all');
   const point = detectorPoint({ declared: { ...band, ...declared }, at: {}, a, b: null, noise: curve('G2'), traits: degeneracyRecipe.traits({}) });
   const b: Side = { ...point.a, waveform: { ...point.a.waveform, content: { kind: 'modes', modes: point.a.waveform.content.kind === 'modes' ? point.a.waveform.content.modes.filter(({ l, m }) => l === 2 && Math.abs(m) === 2) : [] } } };
-  const { matcher, request } = sightProblem(route, point, b, tabled);
+  const { matcher, request } = sightProblem({ route }, point, b, tabled);
   const sight = { inclinationRad, azimuthRad };
   const whole = route.match({ ...request, a: { ...request.a, ...sight }, b: { ...request.b, ...sight } });
   return { table: matcher.best(sight), whole, again: matcher.held(sight, matcher.best(sight)) };
