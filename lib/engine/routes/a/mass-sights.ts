@@ -22,6 +22,10 @@ const MOST_MASSES = 600;
 /** A maximum this close to a bound, in ln of the mass, is on it. */
 const ON_BOUND = 1e-6;
 
+/** Around a sight whose whole grid was looked at, only masses that came near its best are looked at again. */
+const NEIGHBOUR_RAD = 0.3;
+const NEAR_BEST = 0.15;
+
 type MassRequest = NonNullable<SightRequest['mass']>;
 
 interface Found {
@@ -38,9 +42,16 @@ interface Start {
   readonly halvings: number;
 }
 
+/** Angle between two directions. */
+function apart(p: Sight, q: Sight): number {
+  const cosine = Math.cos(p.inclinationRad) * Math.cos(q.inclinationRad) + Math.sin(p.inclinationRad) * Math.sin(q.inclinationRad) * Math.cos(p.azimuthRad - q.azimuthRad);
+  return Math.acos(Math.min(1, Math.max(-1, cosine)));
+}
+
 class MassSights implements SightMatcher {
   private readonly searches = new Map<number, SightSearch | null>();
   private last: { log: number; halvings: number } | null = null;
+  private looked: { sight: Sight; live: readonly number[] } | null = null;
   private readonly low: number;
   private readonly high: number;
   private readonly step: number;
@@ -68,8 +79,9 @@ class MassSights implements SightMatcher {
 
   /** The grid of masses, roughly: those whose ceiling lies below what was found are not gone over. */
   private scanned(a: Sight): { g: number; top: Top }[] {
-    const views = this.factors.flatMap((factor, g) => {
-      const search = this.at(factor);
+    const known = this.looked !== null && apart(this.looked.sight, a) < NEIGHBOUR_RAD ? this.looked.live : null;
+    const views = (known ?? this.factors.map((_, g) => g)).flatMap((g) => {
+      const search = this.at(this.factors[g]!);
       if (search === null) return [];
       const seen = search.seen(a);
       return [{ g, search, seen, ceiling: search.ceiling(seen, a) }];
@@ -84,6 +96,7 @@ class MassSights implements SightMatcher {
       found.push({ g, top });
       most = Math.max(most, top.value);
     }
+    if (known === null) this.looked = { sight: a, live: views.flatMap(({ g, ceiling }) => (ceiling > most - NEAR_BEST ? [g] : [])) };
     return found.filter(({ top }) => top.value > most - ROUGH_ROOM).sort((p, q) => q.top.value - p.top.value);
   }
 
@@ -167,7 +180,9 @@ export function massSights(request: SightRequest, mass: MassRequest, store: Spec
   const span = waveform.domain === 'frequency' ? store.frequency(waveform).span : store.time(waveform).span;
   const growing: Growing = { longestS: span * secondsPerUnit, parts: new Map() };
   const benchAt = (factor: number): SightBench | null => sightBench({ ...request, b: mass.rescale(request.b, factor) }, store, numerics, growing);
-  const middle = massGrid(mass.templateMassRange).map(benchAt).find((bench) => bench !== null);
-  if (middle === undefined) return nothingSeen;
-  return new MassSights(request, benchAt, massGrid(mass.templateMassRange, ratioOf(request, middle, mass)));
+  for (const factor of massGrid(mass.templateMassRange)) {
+    const first = benchAt(factor);
+    if (first !== null) return new MassSights(request, benchAt, massGrid(mass.templateMassRange, ratioOf(request, first, mass)));
+  }
+  return nothingSeen;
 }

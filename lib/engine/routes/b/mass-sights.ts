@@ -13,6 +13,9 @@ const TURNED = 0.12;
 /** What untried shifts and directions may add to a rough value, and to a ceiling. */
 const ROUGH = 0.03;
 const CEILING_ROOM = 1.08;
+/** A whole look at the grid serves sights whose angles both differ by less than this, in rad; masses that came within this of the best are kept. */
+const SERVED = 0.25;
+const KEPT = 0.2;
 const HILLS = 3;
 /** Of the match, what seven masses leave open before their step is halved. */
 const SETTLED = 2e-9;
@@ -54,6 +57,7 @@ class MassSights implements SightMatcher {
   private readonly tables = new Map<number, Priced | null>();
   private readonly low: number;
   private readonly high: number;
+  private whole: { readonly sight: Sight; readonly live: readonly number[] } | null = null;
   private known: { readonly log: number; readonly step: number } | null = null;
 
   constructor(
@@ -85,7 +89,10 @@ class MassSights implements SightMatcher {
 
   /** The grid from its most promising mass down to where nothing can be better. */
   private hills(a: Sight): Hill[] {
-    const looks = this.grid.flatMap((log, i) => {
+    const { whole } = this;
+    const served = whole !== null && Math.abs(whole.sight.inclinationRad - a.inclinationRad) < SERVED && Math.abs(Math.sin((whole.sight.azimuthRad - a.azimuthRad) / 2)) < Math.sin(SERVED / 2);
+    const looks = (served ? whole.live : this.grid.map((_, i) => i)).flatMap((i) => {
+      const log = this.grid[i]!;
       const priced = this.at(log);
       if (priced === null) return [];
       const view = new View(priced.table, a);
@@ -99,6 +106,7 @@ class MassSights implements SightMatcher {
       best = Math.max(best, top.value);
       tried.push({ i, log, tried: top });
     }
+    if (!served) this.whole = { sight: a, live: looks.flatMap(({ i, ceiling }) => (ceiling > best - KEPT ? [i] : [])) };
     const kept: (Hill & { i: number })[] = [];
     for (const hill of tried.sort((p, q) => q.tried.value - p.tried.value)) {
       if (kept.length < HILLS && hill.tried.value > best - ROUGH && kept.every(({ i }) => Math.abs(i - hill.i) > 2)) kept.push(hill);

@@ -84,13 +84,19 @@ export class View {
   /** No direction of b gives more at these shifts: `sizes` holds, by inclination, each part's largest weight over the smallest norm. */
   ceiling(sizes: readonly (readonly number[])[], shifts: readonly number[]): number {
     const { table } = this;
+    const n = table.b.length;
+    const moduli = new Float64Array(n);
     let most = 0;
     for (const shiftS of shifts) {
       const series = table.seriesAt(shiftS);
       const sums = this.sumsOf(series);
       const y = (shiftS - series.centre) / table.reachS;
-      const moduli = table.b.map((_, k) => modulusAt(sums, 2 * TERMS * k, y));
-      for (const size of sizes) most = Math.max(most, moduli.reduce((sum, modulus, k) => sum + modulus * size[k]!, 0));
+      for (let k = 0; k < n; k++) moduli[k] = modulusAt(sums, 2 * TERMS * k, y);
+      for (const size of sizes) {
+        let sum = 0;
+        for (let k = 0; k < n; k++) sum += moduli[k]! * size[k]!;
+        if (sum > most) most = sum;
+      }
     }
     return most / Math.sqrt(this.power);
   }
@@ -98,7 +104,11 @@ export class View {
 
 /** |Σ_p c_p y^p| of the series that begins at a place. */
 function modulusAt(sums: Float64Array, from: number, y: number): number {
-  let [re, im] = [0, 0];
-  for (let i = from + 2 * TERMS - 2; i >= from; i -= 2) [re, im] = [re * y + sums[i]!, im * y + sums[i + 1]!];
+  let re = 0;
+  let im = 0;
+  for (let i = from + 2 * TERMS - 2; i >= from; i -= 2) {
+    re = re * y + sums[i]!;
+    im = im * y + sums[i + 1]!;
+  }
   return Math.hypot(re, im);
 }
