@@ -1,4 +1,4 @@
-/** `npm run check`: types, lint, architecture and units. No database, no browser, under a minute. */
+/** `npm run check`: types, lint, architecture, units and golden numbers. No database, no browser; a path after `--` takes that part of the tests. */
 import { ensureDependencies } from './setup/dependencies.mjs';
 import { runStep } from './setup/commands.mjs';
 import { report, say } from './setup/ground.mjs';

@@ -1,4 +1,4 @@
-import { SEARCHING, type WaitingFlag } from '@/lib/jobs/urgency';
+import { SEARCHING, URGENCY, type WaitingFlag } from '@/lib/jobs/urgency';
 
 /** One run that is under way, as seen by whoever computes it. */
 export interface Turn {
@@ -19,6 +19,8 @@ interface Seat {
   listener: (aside: boolean) => void;
 }
 
+const givesWay = ({ searches, urgency }: Seat): boolean => searches || urgency >= URGENCY.official;
+
 export interface House {
   /** Runs that may be under way at once. */
   readonly slots: number;
@@ -28,7 +30,8 @@ export interface House {
 
 /**
  * Who computes now, of the runs that this worker has taken. The most urgent have the cores, numbers before
- * searches. The last slot is kept for what somebody waits for, and searches never hold all of them.
+ * searches. The last slot is kept for numbers that somebody waits for: when searches and what can wait hold all
+ * of them, the least urgent gives its slot back.
  */
 export class Turns {
   /** In the order of their coming. */
@@ -40,8 +43,8 @@ export class Turns {
 
   /** Before each question to the queue: the words on jobs that have to stay there. */
   ask(): WaitingFlag[] {
-    const free = this.house.slots - this.seats.length - this.asking++;
-    return free <= 1 ? ['can-wait', 'put-off'] : free <= 2 ? ['unhurried'] : [];
+    const held = this.seats.length + this.asking++;
+    return held >= this.house.slots - 1 ? ['can-wait', 'put-off'] : held >= this.house.cores ? ['unhurried'] : [];
   }
 
   answered(): void {
@@ -62,7 +65,7 @@ export class Turns {
 
   private search(seat: Seat): void {
     seat.searches = true;
-    if (this.seats.length >= this.house.slots && this.seats.every(({ searches }) => searches)) this.ranked().at(-1)?.giveBack.abort();
+    if (this.seats.length >= this.house.slots && this.seats.every(givesWay)) this.ranked().at(-1)?.giveBack.abort();
     this.settle();
   }
 

@@ -117,8 +117,8 @@ function problemOf(thrown: unknown, watch: SheetWatch, limit: AbortSignal, limit
 
 let shared: SheetThreads | null = null;
 
-/** Runs that a worker may have under way: two compute, the others wait in their middle or in a search. */
-export const RUN_SLOTS = 4;
+/** Runs that a worker may have under way: two compute, the others stand still in their middle or in a search. */
+export const RUN_SLOTS = 6;
 
 /** The worker process's own pool, opened at the first run. */
 export const runSheet: ComputeSheet = (job: SheetJob, watch: SheetWatch) => (shared ??= openSheetThreads({ ...houseLimits, threads: RUN_SLOTS })).run(job, watch);

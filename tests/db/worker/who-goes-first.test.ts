@@ -7,6 +7,7 @@ import { createS3Store } from '@/lib/storage/s3-store';
 import type { ComputeSheet } from '@/lib/worker/compute';
 import { openLiveness, type Liveness } from '@/lib/worker/liveness';
 import { startRuns } from '@/lib/worker/pools';
+import { RUN_SLOTS } from '@/lib/worker/threads/run-sheet';
 import { burstSheet } from '../../support/burst-sheet';
 import { computeHere, draftWithBursts, must, openServiceDesk, type ServiceDesk } from '../../support/service-desk';
 
@@ -88,7 +89,7 @@ async function waiting(): Promise<readonly { readonly title: string; readonly fl
   return rows.map(({ run, flags }) => ({ title: named.find(({ id }) => id === run)?.title ?? run, flags: Object.keys(flags) }));
 }
 
-describe('a worker with two cores and four slots', () => {
+describe('a worker with two cores', () => {
   it('begins a person’s check before seeding that was queued earlier, and lets it finish first', async () => {
     await seed(0, 'seed 1', 'seed 2', 'seed 3');
     await seed(1, 'seed 4');
@@ -109,6 +110,8 @@ describe('a worker with two cores and four slots', () => {
   });
 
   it('keeps a slot free of searches: the least urgent goes back to the queue, and a newcomer’s check begins at once', async () => {
+    for (const person of [2, 3]) await ask(person, `asked by ${person} once more`);
+    await until(() => held.length === 1 + RUN_SLOTS, 'as many runs as there are slots');
     const searching = held.filter(({ title }) => title !== 'mine');
     for (const run of searching) run.search();
     await until(async () => (await waiting()).length === 3, 'a seed that is back in the queue');
@@ -117,6 +120,6 @@ describe('a worker with two cores and four slots', () => {
     expect(of('the newcomer’s').aside).toBe(false);
     expect((await waiting()).flatMap(({ title, flags }) => (flags.includes('put-off') ? [title] : []))).toEqual(['seed 2']);
     for (const run of held) run.finish();
-    await until(async () => (await finished()).length >= 5, 'the results of all that were under way');
+    await until(async () => (await finished()).length >= 7, 'the results of all that were under way');
   });
 });

@@ -30,6 +30,14 @@ describe('runs under way in one worker', () => {
     searching.turn.searching();
     expect([searching.aside(), asked.aside()]).toEqual([true, false]);
   });
+  it('give a slot back when searches and seeding hold them all', () => {
+    const turns = new Turns(house);
+    const [seed, ...asked] = [seeding, URGENCY.check, URGENCY.check, URGENCY.check].map((urgency) => turns.enter(urgency));
+    for (const turn of asked.slice(0, 2)) turn.searching();
+    expect(seed?.putOff.aborted).toBe(false);
+    asked[2]?.searching();
+    expect([seed?.putOff.aborted, ...asked.map(({ putOff }) => putOff.aborted)]).toEqual([true, false, false, false]);
+  });
   it('never all search: the least urgent gives its slot back, and only that one', () => {
     const turns = new Turns(house);
     const all = [URGENCY.check, seeding, URGENCY.check, URGENCY.check].map((urgency) => turns.enter(urgency));
