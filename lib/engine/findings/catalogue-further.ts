@@ -122,7 +122,7 @@ export const furtherRows: readonly CatalogueRow[] = [
   stop('engine/too-many-lines', 'detectors', 'The product of two spectra would need more frequencies than are held.', 'Narrow the band, or attach a series in time.'),
   stop('engine/polarisation-needs-complex', 'matches', 'The polarisation is maximised over while only one is used.', 'Declare response: complex, or leave out "polarisation".'),
   stop('engine/inclination-needs-modes', 'matches', 'The inclination is maximised over for a strain along one line of sight.', 'Attach the modes, or leave out "inclination".'),
-  stop('engine/search-too-wide', 'degeneracy', 'A search over mass, shift and azimuth is asked for at every line of sight.', 'Leave out "templateMass", or claim one line of sight.'),
+  stop('engine/search-too-wide', 'mode content; degeneracy', 'A search over the template’s mass would tabulate more products of modes than a claim may cost; the text counts them.', 'Narrow templateMassRange, name fewer modes, declare inclinationRad, lower fHighHz, or shorten the record.'),
   stop('engine/no-modes', 'mode content', 'The quantity compares modes, and the file holds a strain along one line of sight.', 'Attach the modes.'),
   stop('engine/hybrid-face-on', 'hybrid loudness', 'The post-Newtonian part is known face-on in the plus polarisation alone.', 'Leave the setting out.'),
   stop('engine/normaliser-missing', 'sums over modes; ringdown', 'The number is referred to a mass that the sheet does not state.', 'State it under "binary", or refer the number to M.'),

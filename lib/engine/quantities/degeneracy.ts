@@ -7,7 +7,7 @@ import { detectorQuantity } from './detector/detector-quantity';
  * Shape:  one number a point.
  * Units:  dimensionless, 0 … 1.
  * Error:  U from route A's own knobs and the printed digits; angles to 1e-5, which enters squared.
- * Fails:  findings that stop (band outside the curve, no signal, a search over the template's mass).
+ * Fails:  findings that stop (band outside the curve, no signal, a table over the template's mass that is too large).
  * Source: Ajith et al. 2011, arXiv:0909.2867; Pürrer et al. 2013, arXiv:1306.2320 (abstracts).
  */
 export const degeneracy = detectorQuantity(

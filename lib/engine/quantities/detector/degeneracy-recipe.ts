@@ -63,7 +63,10 @@ export const degeneracyRecipe: Recipe = {
   },
   floor: () => SIGHT_FLOOR,
   snrLike: false,
-  stops: sightStops,
+  stops: (request) => {
+    const point = detectorPoint(request);
+    return [sightStops(request, point.b ?? point.a, rangeOf(point).inclinationRad)];
+  },
   ownFigures: ({ kit, request }) => (hasModes(detectorPoint(request)) ? inclinationFigure(problemOf(kit, request).problem, request) : []),
   shownPoint: detectorPoint,
 };

@@ -75,7 +75,8 @@ function stopsOf(request: PointRequest): (Finding | null)[] {
     const text = `${given.name} is the strain along one line of sight; what its modes add to each other cannot be read off it.`;
     return [{ code: 'engine/no-modes', level: 'stops-lodging', where: given.name, text, fix: 'Attach the modes.' }];
   }
-  return [content.modes.some(isQuadrupole) ? null : noSignal(given.name, 'in (2,2) or (2,−2) among the modes in use'), ...sightStops(request)];
+  const point = detectorPoint(request);
+  return [content.modes.some(isQuadrupole) ? null : noSignal(given.name, 'in (2,2) or (2,−2) among the modes in use'), sightStops(request, quadrupoleOf(point.a), rangeOf(point).inclinationRad)];
 }
 
 export const modeContentRecipe: Recipe = {

@@ -86,12 +86,14 @@ describe('the match with the quadrupole alone', patient, () => {
     expect(byBoth(modeContentRecipe, { statistic: 'weighted' }, two).A.value).toAgreeWith(weighted, 1e-6);
   });
 
-  it('stops for columns, for a file without the quadrupole, and for a search that would not end', () => {
+  it('stops for columns, for a file without the quadrupole, and for a table over masses that would cost too much', () => {
     const codes = (a: Waveform, settings: DeclaredSettings) => measured({ quantity: 'mode-content', a, settings }).findings.map(({ code, level }) => [code, level]);
     const seconds = axis.map((t) => t * 1e-3);
     expect(codes(columns('columns', seconds, two.content.kind === 'modes' ? two.content.modes[0]!.re : axis, null), { fLowHz: 20 })).toContainEqual(['engine/no-modes', 'stops-lodging']);
     expect(codes(two, { ...band, inclinationRad: 1, modes: [[3, 3], [3, -3]] })).toContainEqual(['engine/no-signal', 'stops-lodging']);
-    expect(codes(two, { ...band, maximise: ['time', 'templateMass'] })).toContainEqual(['engine/search-too-wide', 'stops-lodging']);
+    const wide = measured({ quantity: 'mode-content', a: two, settings: { ...band, maximise: ['time', 'templateMass'], templateMassRange: [0.01, 100] } });
+    expect(wide.points[0]!.value).toBeNull();
+    expect(wide.findings.find(({ code }) => code === 'engine/search-too-wide')?.text).toMatch(/4 × 2 products of modes at 467 masses .* at most 2×10⁷ are tabulated/);
   });
 });
 
