@@ -126,6 +126,16 @@ function lookedAt({ quantity, requests }: Walk, found: readonly Evaluated[]): Me
   return { points, budget: [], findings: findingsOf(quantity, requests, found), assumed: [], settings: [], routeBPoints: [], figures: [] };
 }
 
+/** Two searches over a mass from all sights may end so far apart by their grids alone; what lies beyond is for the verdict to see. */
+const SEARCHED_APART = 1e-5;
+
+/** Where the mass is searched for from all sights, no knob turns the search: the other route's says what it leaves open. */
+function withRoutesApart(request: PointRequest, found: Evaluated, byB: Evaluated | undefined): Evaluated {
+  const apart = Math.abs(found.value - (byB?.value ?? found.value));
+  const searched = request.traits.goesOver !== undefined && (request.declared.maximise?.includes('templateMass') ?? false);
+  return searched && apart <= SEARCHED_APART ? { ...found, doubt: (found.doubt ?? 0) + apart } : found;
+}
+
 function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measurement {
   const { quantity, request, requests, store } = walk;
   const { recipe } = quantity;
@@ -137,7 +147,7 @@ function weighed(walk: Walk, found: readonly Evaluated[], watch: Watch): Measure
   const errors = new Map<number, ComputationError>();
   errorBarIndices(found.length, worst, alone).forEach((i, k, chosen) => {
     step(watch, 0.75 + (0.15 * k) / chosen.length, 'error bar');
-    errors.set(i, computationError(recipe, requests[i]!, found[i]!, store));
+    errors.set(i, computationError(recipe, requests[i]!, withRoutesApart(requests[i]!, found[i]!, byB.get(i)), store));
   });
   const bars = fromNeighbours(found.length, new Map([...errors].map(([i, error]) => [i, error.expanded])), alone);
   step(watch, 0.9, 'error budget');
