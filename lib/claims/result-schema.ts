@@ -14,6 +14,7 @@ const point = z.looseObject({
   routes: z.object({ A: nullable, B: nullable }),
   apart: nullable,
   verdict,
+  because: z.string().optional(),
   components: z.record(z.string(), nullable).optional(),
   settings: z.record(z.string(), z.unknown()).optional(),
 });
@@ -24,6 +25,7 @@ const finding = z.looseObject({
   text: z.string(),
   where: z.string(),
   fix: z.string().optional(),
+  at: z.record(z.string(), z.union([z.number(), z.string()])).optional(),
 });
 
 const budgetLine = z.looseObject({

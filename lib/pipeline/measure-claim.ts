@@ -8,6 +8,7 @@ import type { Measurement } from '@/lib/engine/contract/measurement';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { Cancelled, notComputable, type MeasureRequest, type QuantityInputs, type Watch } from '@/lib/engine/contract/quantity';
 import { duplicateFindings, type Inputs } from './read-inputs';
+import { isStopped, onlyPoints, stoppedPoints, withStoppedPoints } from './stopped-points';
 import type { Place } from '@/lib/kernel/place';
 
 export interface Extent {
@@ -60,13 +61,26 @@ function relativesOf(name: string, sheet: ClaimSheet): string[] {
   return series === undefined ? [] : [...sheet.waveforms.values()].filter((w) => w.run.series === series && w.name !== name).map((w) => w.name);
 }
 
-/** A defect of one quantity must not take the other claims with it: it fails closed and says so. */
+/** A point that stops must not take the others of its sweep with it. */
 function measureOrStop(claim: Claim, inputs: QuantityInputs, extent: Extent, watch: Watch, points: readonly Place[]): Measurement {
   const claimed = claim.claimed.map((entry) => (entry.kind === 'value' ? entry.value : null));
+  const request: MeasureRequest = { claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent };
+  const whole = completed(claim, request, watch);
+  if (claim.over === null || !isStopped(whole)) return withSweep(whole, claim, request);
+  const quiet: Watch = { onProgress: () => undefined, cancelled: watch.cancelled };
+  const stopped = stoppedPoints(request, (part) => completed(claim, part, quiet));
+  if (stopped === null) return withSweep(whole, claim, request);
+  const rest = completed(claim, onlyPoints(request, points.flatMap((_, i) => (stopped.has(i) ? [] : [i]))), watch);
+  return withSweep(isStopped(rest) ? whole : withStoppedPoints(rest, points, stopped), claim, request);
+}
+
+/** A defect of one quantity must not take the other claims with it: it fails closed and says so. */
+function completed(claim: Claim, request: MeasureRequest, watch: Watch): Measurement {
+  const { over } = request;
+  const points = over === null ? [{}] : over.values.map((value) => ({ [over.setting]: value }));
   try {
-    const request: MeasureRequest = { claimId: claim.id, inputs, settings: claim.settings, over: claim.over, claimed, ...extent };
     const measurement = claim.quantity.measure(request, watch);
-    if (measurement.points.length === points.length) return withSweep(completeMeasurement(claim.quantity, request, measurement, watch), claim, request);
+    if (measurement.points.length === points.length) return completeMeasurement(claim.quantity, request, measurement, watch);
     return notComputable([defect(claim, `it gave ${measurement.points.length} values for ${points.length} points`)], points);
   } catch (thrown) {
     if (thrown instanceof Cancelled) throw thrown;

@@ -21,6 +21,8 @@ export interface ResultPoint extends Omit<MeasuredPoint, 'remarks'> {
   /** recomputed − claimed (or its ln on that scale). */
   readonly apart: number | null;
   readonly verdict: VerdictWord;
+  /** Why this point alone has no number, where the others of its sweep have one. */
+  readonly because?: string;
 }
 
 /** Both totals of a budget, at the worst point; where components are missing, what is told bounds the whole from below. */

@@ -9,6 +9,8 @@ import { unitOf } from '@/lib/engine/contract/quantity';
 import { coverageOf } from '@/lib/verdicts/coverage';
 import { remarksOf } from '@/lib/verdicts/remarks';
 import { claimVerdict, decideVerdict, type PointVerdict } from '@/lib/verdicts/verdict';
+import { samePlace } from '@/lib/kernel/place';
+import { stopsAt } from './stopped-points';
 import type { ResultClaim, ResultPoint, ResultSensitivity, ResultUncertainty } from './result';
 
 interface Weighed {
@@ -19,13 +21,12 @@ interface Weighed {
 
 /** A claim and its measurement as one line of the result, every field in its fixed place. */
 export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim {
-  const stopped = measurement.findings.some((finding) => finding.level === 'stops-lodging');
   const points = measurement.points.flatMap((measured, i): Weighed[] => {
     const claimed = claim.claimed[i];
     if (!claimed) return [];
     const { scale } = claim.quantity;
     const naturalTolerance = (value: number): number => claim.quantity.naturalTolerance(value, claim.settings);
-    const weighing = { claimed, measured, routeBRan: measurement.routeBPoints.includes(i), scale, declaredTolerance: claim.tolerance, naturalTolerance, stopped };
+    const weighing = { claimed, measured, routeBRan: measurement.routeBPoints.includes(i), scale, declaredTolerance: claim.tolerance, naturalTolerance, stopped: stopsAt(measurement.findings, measured.at) };
     return [{ claimed, measured, verdict: decideVerdict(weighing) }];
   });
   const worst = points.reduce((far, next) => (farness(next) > farness(far) ? next : far));
@@ -38,7 +39,7 @@ export function weighClaim(claim: Claim, measurement: Measurement): ResultClaim 
     verdict: claimVerdict(points.map((point) => point.verdict.word)),
     remarks: [...ofFindings(measurement.findings), ...remarksOf(points.map(({ claimed, measured, verdict }) => ({ claimed, measured, word: verdict.word })), measurement.budget, uncertainty.data)],
     coverage: coverageOf(worst.claimed, worst.measured.value, measurement.budget, uncertainty.data),
-    points: points.map(resultPoint),
+    points: points.map((point) => resultPoint(point, measurement.findings)),
     budget: measurement.budget.map(budgetLine),
     ...(measurement.budget.length > 0 ? { uncertainty } : {}),
     ...(metricBound ? { metricBound } : {}),
@@ -59,7 +60,8 @@ const farness = ({ verdict }: Weighed): number => (verdict.apart === null ? -1 :
 /** JSON has no NaN: what is not a finite number is null, never zero and never left out. */
 const number = (x: number | null | undefined): number | null => (typeof x === 'number' && Number.isFinite(x) ? x : null);
 
-function resultPoint({ claimed, measured, verdict }: Weighed): ResultPoint {
+function resultPoint({ claimed, measured, verdict }: Weighed, findings: readonly Finding[]): ResultPoint {
+  const own = findings.filter(({ at, level }) => at !== undefined && level === 'stops-lodging' && samePlace(at, measured.at));
   return {
     at: { ...measured.at },
     claimed: claimed.kind === 'value' ? claimed.value : claimed.kind === 'above' ? { above: claimed.bound } : { below: claimed.bound },
@@ -70,6 +72,7 @@ function resultPoint({ claimed, measured, verdict }: Weighed): ResultPoint {
     routes: { A: number(measured.routes.A), B: number(measured.routes.B) },
     apart: number(verdict.apart),
     verdict: verdict.word,
+    ...(own.length > 0 ? { because: own.map(({ text }) => text).join(' ') } : {}),
     ...(measured.settings ? { settings: { ...measured.settings } } : {}),
     ...(measured.components ? { components: Object.fromEntries(Object.entries(measured.components).map(([name, value]) => [name, number(value)])) } : {}),
   };
@@ -105,4 +108,4 @@ function weighedSensitivity(row: Sensitivity, { quantity, settings }: Claim, { m
 
 const usedSetting = ({ name, value, standing, unit }: UsedSetting): UsedSetting => ({ name, value, standing, ...(unit === undefined ? {} : { unit }) });
 
-const finding = ({ code, level, text, where, fix }: Finding): Finding => ({ code, level, text, where, ...(fix === undefined ? {} : { fix }) });
+const finding = ({ code, level, text, where, fix, at }: Finding): Finding => ({ code, level, text, where, ...(fix === undefined ? {} : { fix }), ...(at === undefined ? {} : { at: { ...at } }) });

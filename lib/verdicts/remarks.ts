@@ -14,7 +14,7 @@ export interface WeighedPoint {
 /** Qualifiers beside the verdict: digits overstated, narrower scope, and those the measurement brings (lower bound only). */
 export function remarksOf(points: readonly WeighedPoint[], budget: readonly BudgetLine[], allowed: Allowed): string[] {
   const measured = points.flatMap((point) => point.measured.remarks ?? []);
-  const remarks = [digitsOverstated(points, budget, allowed), narrowerScope(points), ...new Set(measured)];
+  const remarks = [digitsOverstated(points, budget, allowed), narrowerScope(points), withoutNumber(points), ...new Set(measured)];
   return remarks.filter((remark) => remark !== null);
 }
 
@@ -48,14 +48,22 @@ function narrowerScope(points: readonly WeighedPoint[]): string | null {
   return `narrower scope: holds at ${holding.length} of ${points.length} points (${setting} ${runs(points, setting)})`;
 }
 
-/** Neighbouring points that hold are told as a range; words, between which nothing lies, each by itself. */
-function runs(points: readonly WeighedPoint[], setting: string): string {
+/** Some points of a sweep have no number, which says nothing of the others: says which. */
+function withoutNumber(points: readonly WeighedPoint[]): string | null {
+  const without = points.filter(({ word }) => word === 'not-computable');
+  const [setting] = Object.keys(points[0]?.measured.at ?? {});
+  if (setting === undefined || without.length === 0 || without.length === points.length) return null;
+  return `not settled at ${without.length} of ${points.length} points (${setting} ${runs(points, setting, 'not-computable')})`;
+}
+
+/** Neighbouring points of one word are told as a range; words of a setting, between which nothing lies, each by itself. */
+function runs(points: readonly WeighedPoint[], setting: string, word: VerdictWord = 'agrees'): string {
   const told: string[] = [];
   for (let i = 0; i < points.length; i++) {
-    if (points[i]?.word !== 'agrees') continue;
+    if (points[i]?.word !== word) continue;
     let last = i;
     const from = points[i]?.measured.at[setting];
-    while (typeof from === 'number' && points[last + 1]?.word === 'agrees' && typeof points[last + 1]?.measured.at[setting] === 'number') last++;
+    while (typeof from === 'number' && points[last + 1]?.word === word && typeof points[last + 1]?.measured.at[setting] === 'number') last++;
     const to = points[last]?.measured.at[setting];
     told.push(last === i ? `${from}` : last === i + 1 ? `${from}, ${to}` : `${from} to ${to}`);
     i = last;

@@ -79,6 +79,7 @@ export function PointCells({ heading, claim, point, sweep, first, waiting, slots
       <td className="r n lo" role="cell" data-l="Apart by"><Apart heading={heading} point={point} style={style} /></td>
       <td className="r vcell" role="cell" data-l="Verdict">
         {result ? <VerdictChip state={result.verdict} /> : <VerdictChip state="waiting">{waiting}</VerdictChip>}
+        {result?.because && <p className="max-w-[40ch] whitespace-normal text-small text-ink-2">{result.because}</p>}
         {first && claim?.remarks.map((remark) => <Remark key={remark} remark={remark} />)}
         {slots.change?.(heading.id, point.index)}
       </td>

@@ -21,7 +21,7 @@ export function PointTable({ claim, heading }: { readonly claim: ResultClaim; re
               <td className="num">{`${point.printed} ${unitText(heading.unit)}`.trim()}</td>
               <td className="num">{formatWithUncertainty(point.value, point.expandedUncertainty, claim.unit)}</td>
               <td className="num">{point.apart === null ? '—' : heading.scale === 'ln' ? `${formatNumber(Math.expm1(point.apart) * 100, { significant: 2, signed: true })} %` : formatNumber(point.apart, { significant: 2, signed: true })}</td>
-              <td><VerdictChip state={point.verdict} bare /></td>
+              <td><VerdictChip state={point.verdict} bare />{point.because && <p className="max-w-[40ch] text-small text-ink-2">{point.because}</p>}</td>
             </tr>
           ))}
         </tbody>

@@ -1,3 +1,5 @@
+import type { Place } from '@/lib/kernel/place';
+
 export type FindingLevel = 'stops-lodging' | 'needs-answer' | 'worth-a-look' | 'note';
 
 /** A message about the data, with numbers and place (codes and levels: settings.md section 8). */
@@ -9,4 +11,6 @@ export interface Finding {
   readonly where: string;
   /** A next step that would settle it, where one exists. */
   readonly fix?: string;
+  /** The point of a sweep that it speaks of; absent where it speaks of the claim. */
+  readonly at?: Place;
 }

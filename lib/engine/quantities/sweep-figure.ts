@@ -29,6 +29,14 @@ function axisOf({ setting, values }: NonNullable<MeasureRequest['over']>): { rea
   return { kept, x: { label: setting, unit, scale: scaleOf(xs, WIDE_ACROSS), values: xs } };
 }
 
+const MOST_NAMED = 4;
+
+/** A gap in a curve does not say that it is one. */
+function without(places: readonly SweptValue[], all: number): string {
+  if (places.length === 0 || places.length === all) return '';
+  return places.length > MOST_NAMED ? `; no number at ${places.length} of ${all} points` : `; no number at ${places.join(', ')}`;
+}
+
 /**
  * A sweep as one figure: the recomputed number with its U over the swept setting, and what was claimed.
  * Shape:  none for a single number; at most 1 500 points.
@@ -47,7 +55,7 @@ export function sweepFigure(quantity: Pick<Quantity, 'unit' | 'follows'>, { over
   return [
     {
       kind: 'sweep',
-      title: `Value over ${over.setting}`,
+      title: `Value over ${over.setting}${without(kept.filter((i) => points[i]!.value === null).map((i) => over.values[i]!), points.length)}`,
       x,
       series: [line('recomputed', 'recomputed', ({ value }) => value), line('recomputed − U', 'band-low', edge(-1)), line('recomputed + U', 'band-high', edge(1)), line('claimed', 'claimed', (_, i) => claimed[i] ?? null)],
     },

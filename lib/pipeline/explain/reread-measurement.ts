@@ -1,7 +1,9 @@
+import type { Finding } from '@/lib/engine/contract/finding';
 import type { MeasuredPoint, Measurement } from '@/lib/engine/contract/measurement';
 import { isFiniteNumber } from '@/lib/kernel/finite';
 import type { SweptValue } from '@/lib/kernel/place';
 import { distinct } from '../measure-claim';
+import { isStopped } from '../stopped-points';
 
 const times = (value: number | null, k: number): number | null => (value === null ? null : value * k);
 
@@ -24,8 +26,16 @@ export function atPlaces(measurement: Measurement, places: readonly SweptValue[]
     const place = stated(figure.at?.[setting]);
     return place === undefined ? figure : { ...figure, at: { ...figure.at, [setting]: place } };
   });
-  return { ...measurement, figures, points: measurement.points.map((point, i) => ({ ...point, at: { [setting]: places[i] ?? Number.NaN } })) };
+  const findings = measurement.findings.map((finding) => {
+    const place = stated(finding.at?.[setting]);
+    return place === undefined ? finding : { ...finding, at: { [setting]: place } };
+  });
+  return { ...measurement, figures, findings, points: measurement.points.map((point, i) => ({ ...point, at: { [setting]: places[i] ?? Number.NaN } })) };
 }
+
+/** What stops one point speaks of it alone. */
+const ofItsPoint = ({ findings, points: [point] }: Measurement): Finding[] =>
+  findings.map((finding) => (finding.level === 'stops-lodging' && point !== undefined ? { ...finding, at: point.at } : finding));
 
 /** One measurement of points that were measured one by one, each under settings of its own; curves are those of the first. */
 export function oneAfterAnother(measurements: readonly Measurement[]): Measurement {
@@ -33,11 +43,12 @@ export function oneAfterAnother(measurements: readonly Measurement[]): Measureme
   if (first === undefined) throw new Error('a claim has at least one point');
   if (more.length === 0) return first;
   const { metricBound: _bound, sensitivities: _sensitivities, ...rest } = first;
+  const all = measurements.every(isStopped);
   return {
     ...rest,
     points: measurements.flatMap(({ points }) => points),
     routeBPoints: measurements.flatMap(({ routeBPoints }, i) => (routeBPoints.length > 0 ? [i] : [])),
-    findings: distinct(measurements.flatMap(({ findings }) => findings)),
+    findings: distinct(measurements.flatMap((measurement) => (all ? measurement.findings : ofItsPoint(measurement)))),
     assumed: [...new Set(measurements.flatMap(({ assumed }) => assumed))],
   };
 }

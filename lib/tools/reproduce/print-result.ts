@@ -76,7 +76,8 @@ function valueWords(value: unknown): string {
 }
 
 function findingLines(finding: Finding): string[] {
-  const first = `  ${capital(levelWords[finding.level])}: ${finding.text} [${finding.code}, ${finding.where}]`;
+  const at = Object.entries(finding.at ?? {}).map(([name, value]) => `, at ${name} ${value}`).join('');
+  const first = `  ${capital(levelWords[finding.level])}: ${finding.text} [${finding.code}, ${finding.where}${at}]`;
   return finding.fix === undefined ? [first] : [first, `    Next: ${finding.fix}`];
 }
 
