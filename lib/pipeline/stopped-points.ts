@@ -17,7 +17,7 @@ export const isStopped = ({ findings }: Measurement): boolean => findings.some(i
 export function onlyPoints(request: MeasureRequest, indices: readonly number[]): MeasureRequest {
   const { over, claimed } = request;
   if (over === null) return request;
-  return { ...request, over: { ...over, values: indices.map((i) => over.values[i]!) }, claimed: indices.map((i) => claimed[i] ?? null) };
+  return { ...request, over: { ...over, values: indices.flatMap((i) => over.values[i] ?? []) }, claimed: indices.map((i) => claimed[i] ?? null) };
 }
 
 /**
@@ -33,12 +33,14 @@ export function stoppedPoints(request: MeasureRequest, look: (request: MeasureRe
   const n = request.over?.values.length ?? 1;
   const middle = n >> 1;
   const waiting = n < 2 ? [] : [range(0, middle), range(middle, n)];
-  for (let looks = 0; waiting.length > 0; looks++) {
-    if (looks === MOST_LOOKS) return null;
-    const indices = waiting.shift()!;
+  let looks = 0;
+  // What is cut in half joins the end of the list that is walked.
+  for (const indices of waiting) {
+    if (looks++ === MOST_LOOKS) return null;
     const found = look({ ...onlyPoints(request, indices), withFigures: false, routeAOnly: true });
     if (!isStopped(found)) continue;
-    if (indices.length === 1) stopped.set(indices[0]!, found.findings.filter(isStop));
+    const [only, ...others] = indices;
+    if (only !== undefined && others.length === 0) stopped.set(only, found.findings.filter(isStop));
     else waiting.push(indices.slice(0, indices.length >> 1), indices.slice(indices.length >> 1));
   }
   return stopped.size === 0 || stopped.size === n ? null : stopped;
@@ -58,11 +60,11 @@ const noPoint = (at: Place): MeasuredPoint => ({ at, value: null, routes: { A: n
  */
 export function withStoppedPoints(rest: Measurement, places: readonly Place[], stopped: ReadonlyMap<number, readonly Finding[]>): Measurement {
   const measured = range(0, places.length).filter((i) => !stopped.has(i));
-  const sentences = [...stopped].sort(([p], [q]) => p - q).flatMap(([i, findings]) => findings.map((finding): Finding => ({ ...finding, at: places[i]! })));
+  const sentences = places.flatMap((at, i) => (stopped.get(i) ?? []).map((finding): Finding => ({ ...finding, at })));
   return {
     ...rest,
-    points: places.map((at, i) => (stopped.has(i) ? noPoint(at) : rest.points[measured.indexOf(i)]!)),
-    routeBPoints: rest.routeBPoints.map((k) => measured[k]!),
+    points: places.map((at, i) => (stopped.has(i) ? noPoint(at) : (rest.points[measured.indexOf(i)] ?? noPoint(at)))),
+    routeBPoints: rest.routeBPoints.flatMap((k) => measured[k] ?? []),
     findings: [...sentences, ...rest.findings],
   };
 }
