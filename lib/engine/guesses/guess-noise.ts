@@ -59,7 +59,7 @@ function versionGuess(column: NoiseColumn): Guess[] {
     return [{
       about: 'curve-version', convention: 'C40', declared: 'as attached',
       proposed: shape.includes('mistyped') ? `${known.id} with a digit slipped` : `another version of ${known.id}`,
-      value: null, agrees: false,
+      value: null, agrees: false, curve: known.id,
       confidence: named.includes(known) ? 0.8 : 0.6,
       reason: `Beside ${known.id} (${known.title}), ${column.name} ${shape}`,
     }];

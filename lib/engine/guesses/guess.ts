@@ -12,6 +12,8 @@ export interface Guess {
   /** The same as a word or number of a sheet; null where no word of a sheet says it. */
   readonly value: string | number | null;
   readonly agrees: boolean;
+  /** The published curve that is spoken of, where it is of one. */
+  readonly curve?: string;
   /** From 0 to 1; a judgement of how seldom the sign deceives, no computed probability. */
   readonly confidence: number;
   /** One sentence with the measured number and the expected one. */

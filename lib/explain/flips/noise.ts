@@ -9,10 +9,12 @@ const powerWords = [/\bPSD\b/i, /power\s+spectr/i, /(?:\/|per\s+)\s*Hz\b/i, /Hz\
 export const columnMeaning: FlipsOfConvention = (context) => {
   if (context.noise === null) return [];
   const table = context.noise.column !== null;
+  // What the numbers show turns the sentence round: the file is right, its declaration is not.
+  const clauseOf = (option: string, usual: string, shown: string): string => (context.shown.some((one) => one.convention === 'C01' && one.option === option) ? shown : usual);
   const ofColumn = (column: 'asd' | 'psd', words: readonly RegExp[]) => ({ supports: context.noise?.column === column ? words : [] });
   const drafts: (FlipDraft | null)[] = [
-    { convention: 'C01', option: 'root', clause: 'the noise column, an amplitude density, is used as if it were the power density', change: rerun({ edit: 'noise-power', power: 0.5 }), telling: ofColumn('asd', amplitudeWords) },
-    { convention: 'C01', option: 'square', clause: 'the noise, a power density already, is squared once more', change: rerun({ edit: 'noise-power', power: 2 }), telling: ofColumn('psd', powerWords) },
+    { convention: 'C01', option: 'root', clause: clauseOf('root', 'the noise column, an amplitude density, is used as if it were the power density', 'the noise column holds the power density instead of its root'), change: rerun({ edit: 'noise-power', power: 0.5 }), telling: ofColumn('asd', amplitudeWords) },
+    { convention: 'C01', option: 'square', clause: clauseOf('square', 'the noise, a power density already, is squared once more', 'the noise column holds the amplitude density instead of its square'), change: rerun({ edit: 'noise-power', power: 2 }), telling: ofColumn('psd', powerWords) },
     table ? { convention: 'C01', option: 'characteristic', clause: 'the noise column is a characteristic strain, to be divided by √f', change: rerun({ edit: 'noise-times-frequency', power: -1 }), telling: { supports: [/characteristic/i, /\bh_?c\b/] } } : null,
     table ? { convention: 'C01', option: 'not-characteristic', clause: 'the noise column is multiplied by √f', change: rerun({ edit: 'noise-times-frequency', power: 1 }) } : null,
   ];

@@ -45,7 +45,15 @@ const cannotTell = ({ readings }: Facts): string => (readings.length > 1 ? 'The 
 function evidencePart({ readings }: Facts): string {
   const from = (evidence: 'supports' | 'contradicts'): string[] => [...new Set(readings.flatMap((one) => (one.evidence === evidence && one.evidenceFrom !== null ? [one.evidenceFrom] : [])))];
   const [speaksFor, speaksAgainst] = [from('supports'), from('contradicts')];
-  return [speaksFor.length > 0 ? `For it speaks ${listOf(speaksFor)}.` : '', speaksAgainst.length > 0 ? `Against it speaks ${listOf(speaksAgainst)}.` : ''].filter((part) => part !== '').join(' ');
+  return [spoken('for', speaksFor), spoken('against', speaksAgainst)].filter((part) => part !== '').join(' ');
+}
+
+/** What data show is a sentence of its own; what somebody wrote is quoted. */
+function spoken(side: 'for' | 'against', from: readonly string[]): string {
+  const data = from.filter((words) => words.endsWith('.'));
+  const quotes = from.filter((words) => !words.endsWith('.'));
+  const said = quotes.length > 0 ? `${capital(side)} it speak${quotes.length === 1 ? 's' : ''} ${listOf(quotes)}.` : '';
+  return [data.length > 0 ? `The data speak ${side} it: ${data.join(' ')}` : '', said].filter((part) => part !== '').join(' ');
 }
 
 function othersPart({ explains, breaks }: Facts): string {

@@ -3,19 +3,19 @@ import { halfLastDigit } from '@/lib/claims/claimed';
 import { waveformNames } from '@/lib/claims/claim';
 import { atWords, routeBIndices, worstIndex } from '@/lib/engine/budget/chosen-points';
 import type { Measurement } from '@/lib/engine/contract/measurement';
-import { guessWaveform } from '@/lib/engine/guesses/guess-waveform';
 import type { QuantityInputs } from '@/lib/engine/contract/quantity';
 import type { Waveform } from '@/lib/engine/contract/waveform';
 import { builtInCurves } from '@/lib/engine/noise/built-in-curves';
 import { houseCosmology, redshiftAt, type Cosmology } from '@/lib/engine/units/cosmology';
 import type { Flip } from '@/lib/explain/flip';
-import type { FlipContext, NoiseFacts, Shown, SiblingClaim, Written } from '@/lib/explain/flips/flip-context';
+import type { FlipContext, NoiseFacts, SiblingClaim, Written } from '@/lib/explain/flips/flip-context';
 import { flipsOf } from '@/lib/explain/flips/flips-of';
 import type { JudgedClaim, JudgedPoint } from '@/lib/explain/search/node';
 import { identityIn } from '@/lib/formats/hidden-identity';
 import type { Inputs } from '../read-inputs';
 import type { ResultClaim } from '../result';
 import type { Asked } from './predict';
+import { shownByNoise, shownByWaveform } from './shown';
 
 /** A claim that was measured and weighed, with what it was measured from. */
 export interface Weighed {
@@ -41,7 +41,7 @@ export function subjectOf(weighed: Weighed, sheet: ClaimSheet, inputs: Inputs, s
   const points = judgedPoints(weighed);
   if (points === null) return null;
   const told = contextOf(weighed, sheet, inputs, siblings);
-  const context: FlipContext = { ...told, shown: told.waveforms.flatMap(shownBy) };
+  const context: FlipContext = { ...told, shown: [...told.waveforms.flatMap(shownByWaveform), ...shownByNoise(claim.noise, sheet, inputs)] };
   const judged: JudgedClaim = {
     id: claim.id,
     quantity: claim.quantity.id,
@@ -86,15 +86,6 @@ export function contextOf({ claim, inputs: resolved, measurement }: Omit<Weighed
     redshiftAt: (distance) => redshiftAt(distance, cosmology),
   };
 }
-
-/** From here on a guess speaks against a declaration. */
-const SURE = 0.8;
-
-/** What the samples say against the declaration; the unit of time is no reading of one convention. */
-const shownBy = (waveform: Waveform): Shown[] =>
-  guessWaveform(waveform)
-    .filter(({ agrees, confidence }) => !agrees && confidence >= SURE)
-    .flatMap(({ about, convention, proposed, reason }) => (convention === null ? [] : [{ convention, option: about === 'variable' ? proposed : null, reason }]));
 
 function noiseFacts(claim: Claim, { noise: curve }: QuantityInputs, sheet: ClaimSheet): NoiseFacts | null {
   const declared = claim.noise === null ? undefined : sheet.noise.get(claim.noise);

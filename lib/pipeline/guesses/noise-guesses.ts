@@ -17,7 +17,7 @@ export interface DeclaredNoise {
 }
 
 /** The column as the file has it: what was declared of it is undone. */
-function columnOf({ declaration, curve, heads }: DeclaredNoise): NoiseColumn | null {
+export function noiseColumnOf({ declaration, curve, heads }: Omit<DeclaredNoise, 'raw'>): NoiseColumn | null {
   const role = declaration.columns.map((column) => column.role).find(({ kind }) => kind === 'noise');
   const f = curve.points;
   if (role?.kind !== 'noise' || f === null) return null;
@@ -45,6 +45,6 @@ function place(guess: Guess, { raw, declaration }: DeclaredNoise): Placed {
 
 /** What the numbers of one noise table say of its declaration. */
 export function noiseGuesses(of: DeclaredNoise): readonly Placed[] {
-  const column = columnOf(of);
+  const column = noiseColumnOf(of);
   return column === null ? [] : guessNoise(column).map((guess) => place(guess, of));
 }

@@ -35,6 +35,11 @@ describe('a candidate in words', () => {
     expect(sentence).toContain('For it speaks noise.txt: “f  ASD”. Against it speaks statement: “one-sided”.');
   });
 
+  it('say of the data in a sentence of their own what they show, and end it once', () => {
+    const sentence = candidateSentence(match, { ...facts, readings: [reading('a holds', { evidence: 'supports', evidenceFrom: 'S holds half of the power of G2.' }), reading('b holds', { evidence: 'supports', evidenceFrom: 'noise.txt: “two-sided”' })] });
+    expect(sentence).toContain('The data speak for it: S holds half of the power of G2. For it speaks noise.txt: “two-sided”. ');
+  });
+
   it('never says what somebody did', () => {
     const sentences = [facts, { ...facts, standing: 'coincidence' as const, breaks: ['C2', 'C3'], explains: ['C4'] }].map((one) => candidateSentence(match, one));
     for (const sentence of sentences) {
