@@ -8,6 +8,7 @@ import { Table } from '@/app/_ui/primitives/table';
 import { quantityWord } from '@/app/views/quantity-word';
 import type { Convention, ConventionGroup } from '@/lib/explain/conventions/convention';
 import { conventions, groupTitles } from '@/lib/explain/conventions/conventions';
+import { notTried } from '@/lib/explain/conventions/not-tried';
 
 /** Where the house says what it means, section by section. */
 const houseSections: Readonly<Record<ConventionGroup, readonly (readonly [anchor: string, words: string])[]>> = {
@@ -50,7 +51,7 @@ function Row({ convention }: { readonly convention: Convention }) {
       <td>{effect}</td>
       <td>{commonWords[commonness]}<span className="block text-ink-2">{kinds.map((kind) => kindWords[kind]).join(' or ')}</span></td>
       <td><Affected id={id} affects={affects} /></td>
-      <td>{detect ?? 'No file shows it; only the text can.'}<SaidBy convention={convention} /></td>
+      <td>{detect ?? 'No file shows it; only the text can.'}<SaidBy convention={convention} />{notTried[id] !== undefined && <span className="mt-1 block text-ink-2">Not tried by the search, because {notTried[id]}.</span>}</td>
     </tr>
   );
 }
