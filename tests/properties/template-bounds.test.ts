@@ -6,8 +6,9 @@ import { houseNumerics } from '@/lib/engine/routes/a/numerics';
 import { matchBounds } from '@/lib/engine/routes/a/pair-bound';
 import { promising } from '@/lib/engine/routes/a/promising-masses';
 import { SpectrumStore } from '@/lib/engine/routes/a/spectrum-store';
-import { templateBank } from '@/lib/engine/routes/a/template-bank';
-import { scanTemplates, slicer } from '@/lib/engine/routes/a/template-scan';
+import { sharpBank, templateBank } from '@/lib/engine/routes/a/template-bank';
+import { reachFor } from '@/lib/engine/routes/a/template-frame';
+import { scanTemplates, slicer, sourceOf } from '@/lib/engine/routes/a/template-scan';
 import { curve } from '../support/detector-claims';
 import { seededRandom } from '../support/seeded-random';
 import { drawnBy, requestOf, rescale, tableCurve, threeModes } from '../support/template-banks';
@@ -16,14 +17,18 @@ type RealRequest = TemplateRequest & { readonly response: 'plus' };
 
 function bench(a: Side, request: RealRequest) {
   const factors = massGrid(request.templateMassRange);
-  const shared = { factors, request, store: new SpectrumStore(), numerics: houseNumerics };
-  const bank = templateBank({ signals: [a], ...shared });
-  const sliceAt = slicer(bank, a, shared);
+  const shared = { signals: [a], factors, request, store: new SpectrumStore(), numerics: houseNumerics };
+  const bank = templateBank(shared, reachFor(request.band.noise));
+  const sharpest = sharpBank(shared, bank);
+  const source = sourceOf(sharpest, a, shared);
+  const sliceAt = slicer(bank, a, source);
   return {
     factors,
     bank,
-    boundsAt: (t: number, factor: number) => matchBounds(sliceAt(factor), bank.templates[t]!),
-    matchAt: scanTemplates(bank, a, shared).sharp,
+    boundsAt: (t: number, factor: number) => matchBounds(sliceAt(factor), bank.template(t)),
+    /** On the bins that the bounds are of, and on those that the best match is sought on. */
+    matchAt: scanTemplates(bank, bank, a, source, factors).sharp,
+    sharpAt: scanTemplates(bank, sharpest, a, source, factors).sharp,
   };
 }
 
@@ -34,7 +39,7 @@ describe('the bounds of the search over many templates', () => {
     const random = seededRandom(5);
     const drawn = drawnBy(random);
     const templates = [drawn(100), drawn(80), threeModes(1), threeModes(1.1)];
-    const { boundsAt, matchAt } = bench(drawn(100), requestOf(templates, 20, [0.7, 1.4], noise));
+    const { boundsAt, matchAt, sharpAt } = bench(drawn(100), requestOf(templates, 20, [0.7, 1.4], noise));
     for (let i = 0; i < 120; i++) {
       const [t, factor] = [i % templates.length, 0.7 * 2 ** random()];
       const { least, most } = boundsAt(t, factor);
@@ -42,6 +47,7 @@ describe('the bounds of the search over many templates', () => {
       expect(least).toBeLessThanOrEqual(match);
       expect(most).toBeGreaterThanOrEqual(match);
       expect(match - least).toBeLessThan(5e-3);
+      expect(Math.abs(match - sharpAt(t, factor))).toBeLessThan(5e-5);
     }
   });
 

@@ -4,8 +4,9 @@ import { brentMaximum } from '@/lib/engine/series/brent-maximum';
 import { JointSearch, massGrid } from './joint-search';
 import type { Numerics } from './numerics';
 import type { SpectrumStore } from './spectrum-store';
-import { templateBank } from './template-bank';
-import { scanTemplates, type TemplateScan } from './template-scan';
+import { sharpBank, templateBank, type TemplateBank } from './template-bank';
+import { reachFor } from './template-frame';
+import { scanTemplates, sourceOf, type TemplateScan } from './template-scan';
 
 export interface Context {
   readonly store: SpectrumStore;
@@ -182,12 +183,17 @@ function bestOf(scan: TemplateScan, a: Side, request: RealRequest, factors: read
  */
 export function bestPlaces(signals: readonly Side[], request: RealRequest, context: Context, everywhere = false): BestPlace[] {
   const factors = request.maximise.includes('templateMass') ? massGrid(request.templateMassRange) : [1];
-  const shared = { factors, request, ...context };
-  const bank = templateBank({ signals, ...shared });
+  const shared = { signals, factors, request, ...context };
+  const bank = templateBank(shared, reachFor(request.band.noise));
+  const sharpest = sharpBank(shared, bank);
+  let whole: TemplateBank | null = null;
   return signals.map((a, s) => {
     const onStep = (): void => request.onStep?.((1 + s / signals.length) / 2);
     onStep();
-    return bestOf(scanTemplates(bank, a, { ...shared, everywhere, onStep }), a, request, factors, context);
+    const source = sourceOf(sharpest, a, shared);
+    const scanOf = (looked: TemplateBank): TemplateScan => scanTemplates(looked, sharpest, a, source, factors, { everywhere, onStep });
+    const scan = scanOf(bank);
+    return bestOf(scan.unsettled ? scanOf((whole ??= templateBank(shared, 'all'))) : scan, a, request, factors, context);
   });
 }
 

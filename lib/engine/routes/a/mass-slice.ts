@@ -18,6 +18,9 @@ export interface MassSlice {
   /** The middle of its power, and Σ V (k − middle)² |a|² over the core. */
   readonly middle: number;
   readonly spread: number;
+  /** When the record begins and ends, as shares of the period that the bins tell apart. */
+  readonly from: number;
+  readonly to: number;
 }
 
 /** Of a signal's weighted power, what may be left out at each end of its bins: it changes no match by more than the root. */
@@ -68,5 +71,5 @@ export function massSlice(source: SignalSource, dF: number, { first, values }: P
   for (let k = 0; k < n; k++) if (k < coreFrom || k >= coreTo) outside += Math.abs(powers[k]!);
   const mean = inside > 0 ? Math.round(moment / inside) : 0;
   for (let k = coreFrom; k < coreTo; k++) square += (k - mean) * (k - mean) * powers[k]!;
-  return { weights: { first, values }, first: first + from, re, im, norm, coreFrom: first + coreFrom, coreTo: first + coreTo, outside, middle: first + mean, spread: square };
+  return { weights: { first, values }, first: first + from, re, im, norm, coreFrom: first + coreFrom, coreTo: first + coreTo, outside, middle: first + mean, spread: square, from: source.from * dF, to: source.to * dF };
 }

@@ -6,13 +6,16 @@ import { gridFor } from './side-spectra';
 import { derivativeOrder } from './spectrum';
 import type { SpectrumStore } from './spectrum-store';
 import { seriesBins, type SeriesBins } from './series-bins';
-import type { Polarisations } from './time-source';
+import type { Polarisations, SampleGrid } from './time-source';
 
 /** The bins of one real response that a band can ask for, and nothing else: a bank holds hundreds. */
 export interface PackedSide {
   readonly first: number;
   readonly re: Float64Array;
   readonly im: Float64Array;
+  /** When the record begins and ends, as shares of the period that the bins tell apart. */
+  readonly from: number;
+  readonly to: number;
 }
 
 /** Every so-manieth bin's S, where F dB/dF = i k S but for a turn that grows with frequency; k counts these bins alone. */
@@ -27,6 +30,8 @@ export interface Packing {
   readonly response: Exclude<Response, 'complex'>;
   readonly store: SpectrumStore;
   readonly numerics: Numerics;
+  /** Every second sample of an even record is enough, if the spectrum says so afterwards. */
+  readonly thin?: boolean;
 }
 
 /** Of the weighed power, what may lie above the bins that are kept. */
@@ -56,6 +61,9 @@ function peakOf(values: Float64Array): number {
   return at;
 }
 
+const everySecondOf = (grid: SampleGrid): SampleGrid =>
+  grid.stride === null ? grid : { ...grid, dt: 2 * grid.dt, n: ((grid.n - 1) >> 1) + 1, stride: 2 * grid.stride };
+
 /**
  * Prepares a side for a bank.
  * Shape:  time domain; the grid is that of bins `dF`. Times count from the sample of the largest modulus.
@@ -64,9 +72,10 @@ function peakOf(values: Float64Array): number {
  * Fails:  never.
  * Source: engine design: spectra of all templates in memory.
  */
-export function responseSeries(side: Side, dF: number, { response, store, numerics }: Omit<Packing, 'band'>): ResponseSeries {
+export function responseSeries(side: Side, dF: number, { response, store, numerics, thin = false }: Omit<Packing, 'band'>): ResponseSeries {
   const source = store.time(side.waveform);
-  const grid = gridFor(side, store, numerics, dF);
+  const whole = gridFor(side, store, numerics, dF);
+  const grid = thin ? everySecondOf(whole) : whole;
   const values = source.response(grid, numerics.interpolationOrder, side.inclinationRad, side.azimuthRad, polarisations(response));
   const weights = windowWeights(grid, grid.tEnd, side.taper, numerics.edgeOrder);
   for (let k = 0; k < values.length; k++) values[k]! *= weights[k]!;
@@ -113,14 +122,22 @@ function liveBins(bins: SeriesBins, order: number, first: number, stride: number
  */
 export function packedSide(series: ResponseSeries, dF: number, first: number, stride: number, weights: Float64Array): PackedSide {
   const most = Math.max(0, Math.min(weights.length, Math.floor(series.top / dF) - first + 1));
-  if (most === 0) return { first, re: new Float64Array(0), im: new Float64Array(0) };
-  const bins = seriesBins(series.values, series, dF, first, most);
+  const { values, origin, dt } = series;
+  const extent = { from: -origin * dt * dF, to: (values.length - 1 - origin) * dt * dF };
+  if (most === 0) return { first, re: new Float64Array(0), im: new Float64Array(0), ...extent };
+  const bins = seriesBins(values, series, dF, first, most);
   const n = liveBins(bins, series.order, first, stride, weights, Math.min(most, bins.last - first + 1));
   const [re, im] = [new Float64Array(n), new Float64Array(n)];
   bins.read(first, 1, n, re, im);
   toStrain(series.order, first, 1, n, re, im);
-  return { first, re, im };
+  return { first, re, im, ...extent };
 }
+
+/** Content that ends below this share of its samples' own limit leaves too little above the limit to be folded down on it: 2e-4 of its size was not reached. */
+const ENDS_BELOW = 0.85;
+
+/** Do the bins of a packed side end so low that thinning its samples did no harm? */
+export const endsBelow = ({ top }: ResponseSeries, { first, re }: PackedSide, dF: number): boolean => (first + re.length) * dF <= ENDS_BELOW * top;
 
 let timed = new Float64Array(0);
 

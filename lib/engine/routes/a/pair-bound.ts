@@ -7,6 +7,8 @@ import type { PackedSide } from './packed-side';
 export interface MatchBounds {
   readonly least: number;
   readonly most: number;
+  /** `most` is what lags that the bins do not tell apart could hide. */
+  readonly byFarLags?: boolean;
 }
 
 /** Lags for each bin by which the power spreads: between them the modulus rises by a third of its most. */
@@ -18,6 +20,8 @@ const MOST_STEPS = 4;
 /** A summit may stand so little below the lag it is sought from: the promise of a last step errs by as much. */
 const SETTLED = 1 - 1e-6;
 const ROOM = 2e-5;
+/** Of a look that far lags leave open: it is not taken for one that holds nothing. */
+const LEAST = 1e-9;
 
 interface Scratch {
   readonly data: Float64Array;
@@ -111,16 +115,43 @@ function otherAbove(heights: Float64Array, at: number, least: number): number {
   return other > least ? other : 0;
 }
 
+interface Tops {
+  readonly top: number;
+  readonly highest: number;
+  /** How high |c| is at lags that are taken for others, at most; 0 where there are none. */
+  readonly far: number;
+}
+
 /** The top of the highest hill, and how high |c| may be at any lag. */
-function topsOf(product: PairProduct, size: number, unseen: number): { readonly top: number; readonly highest: number } {
+function topsOf(product: PairProduct, size: number, unseen: number, zone: LagZone | null): Tops {
   const { heights, at } = atLags(product, size);
   const most = Math.sqrt(heights[at]!);
+  const far = zone === null ? 0 : Math.sqrt(highestIn(heights, zone)) + unseen;
   const summit = Math.sqrt(climbed(product, heights, at));
-  if (!(summit > most * SETTLED)) return { top: most, highest: most + unseen };
+  if (!(summit > most * SETTLED)) return { top: most, highest: most + unseen, far };
   const top = Math.max(summit, most);
   // A lag that is not beside the highest one counts where it could hide more.
   const other = otherAbove(heights, at, Math.max(0, top - unseen) ** 2);
-  return { top, highest: other === 0 ? top : Math.max(top, Math.sqrt(other) + unseen) };
+  return { top, highest: other === 0 ? top : Math.max(top, Math.sqrt(other) + unseen), far };
+}
+
+/** Lags from `from` to `to`, which stand also for those a period above; a period is 1. */
+interface LagZone {
+  readonly from: number;
+  readonly to: number;
+}
+
+/** Records that meet at lags more than a period apart meet there with their ends alone, and both lags add up. */
+function farZone(slice: MassSlice, template: PackedSide): LagZone | null {
+  const [from, to] = [slice.from - template.to, slice.to - template.from - 1];
+  return to > from ? { from, to } : null;
+}
+
+function highestIn(heights: Float64Array, { from, to }: LagZone): number {
+  const size = heights.length;
+  let most = 0;
+  for (let lag = Math.floor(from * size) - 1; lag <= to * size + 1; lag++) most = Math.max(most, heights[((lag % size) + size) % size]!);
+  return most;
 }
 
 /**
@@ -128,7 +159,8 @@ function topsOf(product: PairProduct, size: number, unseen: number): { readonly 
  * Shape:  one slice of the signal, one template on the same bins.
  * Units:  dimensionless.
  * Error:  between the lags of the transform the modulus rises by ½ (δω)² Σ (ω − ω₀)² |c| at most, and that sum by no more than
- *         Cauchy and Schwarz allow; bins outside the core likewise. The highest hill is climbed, so that the bounds mostly lie some 1e-4 apart.
+ *         Cauchy and Schwarz allow; bins outside the core likewise. The highest hill is climbed, so that the bounds mostly lie some 1e-4 apart. Of two lags that add up to h one may hold (1 + h)/2:
+ *         the ends that meet at the one and those that meet at the other share each side's power.
  * Fails:  never; a side without power gives 0.
  * Source: Taylor's remainder about the maximum; our assembly.
  */
@@ -154,6 +186,13 @@ export function matchBounds(slice: MassSlice, template: PackedSide): MatchBounds
   const size = Math.min(mostLags, powerOfTwoFrom(Math.max(LEAST_LAGS, LAGS_PER_SPREAD * width)));
   const half = Math.PI / size;
   const unseen = (half * half * Math.sqrt(slice.spread * product.spread)) / 2;
-  const { top, highest } = topsOf(product, size, unseen);
-  return { least: Math.max(0, top / norms - rest), most: Math.min(1, highest / norms + rest) };
+  const zone = farZone(slice, template);
+  const { top, highest, far } = topsOf(product, size, unseen, zone);
+  const most = Math.min(1, highest / norms + rest);
+  if (zone === null) return { least: Math.max(0, top / norms - rest), most };
+  // More than two lags may add up where a period is shorter than a record.
+  const hidden = zone.to - zone.from < 1 ? (1 + far / norms) / 2 + rest : 1;
+  // The top itself may be a sum of two.
+  const least = far >= top ? top / 2 : top;
+  return { least: Math.max(LEAST, least / norms - rest), most: Math.min(1, Math.max(most, hidden)), byFarLags: hidden > most };
 }

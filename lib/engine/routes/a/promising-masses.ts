@@ -1,7 +1,7 @@
 import type { MatchBounds } from './pair-bound';
 
 /** What the bins of a scan, and those on which the best match is read, may differ by. */
-const ROOM = 1e-4;
+const ROOM = 2e-4;
 
 const angleOf = (match: number): number => Math.acos(Math.min(1, Math.max(-1, match)));
 

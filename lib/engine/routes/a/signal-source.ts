@@ -7,6 +7,9 @@ import { responseSeries, type Packing, type ResponseSeries } from './packed-side
 export interface SignalSource {
   /** Bins from `first` on, interleaved re and im; as many as the content reaches, at most up to `last`. Times count from the middle of the record. */
   readonly bins: (dF: number, first: number, last: number) => Float64Array;
+  /** When the record begins and ends, in units of its axis. */
+  readonly from: number;
+  readonly to: number;
 }
 
 /** Bins this much finer than the record's length resolves turn by 0.2 rad at most: eight of them interpolate to 2e-9. */
@@ -84,7 +87,10 @@ export function signalSource(side: Side, dF: number, packing: Omit<Packing, 'ban
   const fine = FINER * values.length <= MOST_FINE ? fineOf(series) : null;
   const samples = fine === null ? new Float64Array(2 * values.length) : null;
   if (samples !== null) for (let j = 0; j < values.length; j++) samples[2 * j] = values[j]!;
+  const middle = values.length >> 1;
   return {
+    from: -middle * dt,
+    to: (values.length - 1 - middle) * dt,
     bins: (spacing, first, last) => {
       const count = Math.max(0, Math.min(last, Math.floor(top / spacing)) - first + 1);
       if (count === 0) return new Float64Array(0);

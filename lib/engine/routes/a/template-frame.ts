@@ -1,3 +1,4 @@
+import type { NoiseCurve } from '@/lib/engine/contract/noise-curve';
 import type { Side } from '@/lib/engine/contract/route';
 import { powerOfTwoFrom } from '@/lib/engine/fourier/transform';
 import type { Numerics } from './numerics';
@@ -6,6 +7,14 @@ import type { SpectrumStore } from './spectrum-store';
 
 /** The padded record is this much longer than the longest lag. */
 const LAG_ROOM = 1.02;
+/** The same over the longest record, where far lags may be taken for one another. */
+const NEAR_ROOM = 1.25;
+
+/** Which lags bins tell apart: all of them, or all but those at which records meet with their ends alone. */
+export type Reach = 'all' | 'near';
+
+/** Lines of a table ring longer than records last: there bins that tell few lags apart err by more than the search leaves room for. */
+export const reachFor = ({ points }: NoiseCurve): Reach => (points === null ? 'near' : 'all');
 
 const spanS = (side: Side, store: SpectrumStore): number => store.time(side.waveform).span * side.secondsPerUnit;
 
@@ -25,18 +34,19 @@ export interface TemplateFrame {
 }
 
 /**
- * Bins so fine that no lag of any pair at any factor is taken for another. In bins every template stands still: a factor moves
- * the signal and the noise.
+ * Bins for every pair at every factor. In bins every template stands still: a factor moves the signal and the noise.
  * Shape:  time-domain sides; factors rising.
  * Units:  Hz.
- * Error:  none of its own.
+ * Error:  none of its own; with a reach of `near` two lags may add up, which `matchBounds` counts.
  * Fails:  never.
  * Source: a product over a finite lag is told apart by bins of 1/lag.
  */
-export function templateFrame(signals: readonly Side[], templates: readonly Side[], factors: readonly number[], store: SpectrumStore, numerics: Numerics): TemplateFrame {
+export function templateFrame(signals: readonly Side[], templates: readonly Side[], factors: readonly number[], reach: Reach, store: SpectrumStore, numerics: Numerics): TemplateFrame {
   const longest = (sides: readonly Side[]): number => Math.max(...sides.map((side) => spanS(side, store)));
   const span = longest(templates);
-  const df = fitted(LAG_ROOM * (longest(signals) / factors[0]! + span), templates[0]!, store, numerics);
+  const other = longest(signals) / factors[0]!;
+  const all = LAG_ROOM * (other + span);
+  const df = fitted(reach === 'all' ? all : Math.min(all, NEAR_ROOM * Math.max(other, span)), templates[0]!, store, numerics);
   let stride = 1;
   while (2 * stride * df * span * LAG_ROOM <= 1) stride *= 2;
   return { dfHz: (factor) => df / factor, stride };

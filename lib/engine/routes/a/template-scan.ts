@@ -5,15 +5,17 @@ import { massSlice, type MassSlice } from './mass-slice';
 import { matchBounds, type MatchBounds } from './pair-bound';
 import type { PackedSide } from './packed-side';
 import { promising } from './promising-masses';
-import { signalSource } from './signal-source';
-import type { BankRequest, TemplateBank } from './template-bank';
+import { signalSource, type SignalSource } from './signal-source';
+import type { BankRequest, PackedBank, TemplateBank } from './template-bank';
 
 /** Matches of one signal with every template at every factor: rough ones, and sharp ones where asked. */
 export interface TemplateScan {
-  /** [template][factor], flattened, low by 1e-4 at most; 0 where no match beside the factor can be the best. */
+  /** [template][factor], flattened, low by 3e-4 at most; 0 where no match beside the factor can be the best. */
   readonly rough: Float32Array;
-  /** The match at any factor, its lag refined, on the scan's own bins. */
+  /** The match at any factor, its lag refined, on the sharp bins. */
   readonly sharp: (template: number, massFactor: number) => number;
+  /** Some of the places that stay would not if far lags were told apart. */
+  readonly unsettled: boolean;
 }
 
 /** Numbers of one signal that are kept at several masses: 32 MB. */
@@ -55,23 +57,27 @@ function productOf(a: MassSlice, b: PackedSide, buffers: Buffers): CrossSpectrum
   return { first: from, n, plusRe: re, plusIm: im, minusRe: null, minusIm: null, normA: a.norm, normB: normOf(a.weights, b) };
 }
 
+/** A signal ready for any bank: its bins are read off one spectrum. */
+export const sourceOf = (bank: PackedBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): SignalSource =>
+  signalSource(a, widthIn(bank, a, 1), { response: request.response, store, numerics });
+
+const widthIn = (bank: PackedBank, a: Side, factor: number): number => Number((bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
+
 /**
  * One signal's slices, those last asked for kept.
- * Shape:  a bank made for this signal among others; a slice for any factor.
+ * Shape:  a slice for any factor, on the bins of a bank.
  * Units:  as `massSlice`.
  * Error:  as `massSlice`.
  * Fails:  never.
  * Source: ours.
  */
-export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }: Omit<BankRequest, 'signals' | 'factors'>): (factor: number) => MassSlice {
-  const dFOf = (factor: number): number => Number((bank.dfHz(factor) * a.secondsPerUnit).toPrecision(14));
-  const source = signalSource(a, dFOf(1), { response: request.response, store, numerics });
+export function slicer(bank: PackedBank, a: Side, source: SignalSource): (factor: number) => MassSlice {
   const kept = new Map<number, MassSlice>();
   let numbers = 0;
   return (factor) => {
     const known = kept.get(factor);
     if (known) return known;
-    const made = massSlice(source, dFOf(factor), bank.weightsAt(factor));
+    const made = massSlice(source, widthIn(bank, a, factor), bank.weightsAt(factor));
     if ((numbers += 2 * made.re.length) > MOST_KEPT) {
       kept.clear();
       numbers = 2 * made.re.length;
@@ -81,7 +87,7 @@ export function slicer(bank: TemplateBank, a: Side, { request, store, numerics }
   };
 }
 
-export interface ScanRequest extends Omit<BankRequest, 'signals'> {
+export interface ScanRequest {
   /** Look at every template at every factor, whatever the bounds say. */
   readonly everywhere?: boolean;
   /** Called every so many looks. */
@@ -90,25 +96,27 @@ export interface ScanRequest extends Omit<BankRequest, 'signals'> {
 
 /**
  * Looks at one signal with every template, at the factors on its mass where the best match could lie.
- * Shape:  a bank made for this signal among others.
+ * Shape:  a bank for the looks and a sharp one, both made for this signal among others.
  * Units:  dimensionless.
- * Error:  rough: 1e-4 at most; sharp: 2e-5, the bins' own. What is left out is bounded, not guessed.
+ * Error:  rough: 3e-4 at most; sharp: 2e-5, the bins' own. What is left out is bounded, not guessed.
  * Fails:  never; sides without power in the band give 0.
  * Source: engine design: a mass only stretches the frequencies; `promising` for what is left out.
  */
-export function scanTemplates(bank: TemplateBank, a: Side, { everywhere = false, onStep, ...shared }: ScanRequest): TemplateScan {
-  const { factors } = shared;
-  const sliceAt = slicer(bank, a, shared);
+export function scanTemplates(bank: TemplateBank, sharpest: PackedBank, a: Side, source: SignalSource, factors: readonly number[], { everywhere = false, onStep }: ScanRequest = {}): TemplateScan {
+  const [sliceAt, sharpSlice] = [slicer(bank, a, source), slicer(sharpest, a, source)];
   const buffers: Buffers = { re: new Float64Array(0), im: new Float64Array(0) };
+  const unsettled = new Set<number>();
   let looks = 0;
   const look = (t: number, g: number): MatchBounds => {
     if (++looks % LOOKS_A_STEP === 0) onStep?.();
-    return matchBounds(sliceAt(factors[g]!), bank.templates[t]!);
+    const found = matchBounds(sliceAt(factors[g]!), bank.template(t));
+    if (found.byFarLags) unsettled.add(t * factors.length + g);
+    return found;
   };
   const rough = promising(bank.paths, look, everywhere);
   const sharp = (t: number, factor: number): number => {
-    const product = productOf(sliceAt(factor), bank.templates[t]!, buffers);
+    const product = productOf(sharpSlice(factor), sharpest.template(t), buffers);
     return product.normA > 0 && product.normB > 0 ? findLag(product, 'modulus', 1).value / Math.sqrt(product.normA * product.normB) : 0;
   };
-  return { rough, sharp };
+  return { rough, sharp, unsettled: [...unsettled].some((place) => rough[place]! > 0) };
 }
