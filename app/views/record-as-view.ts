@@ -8,6 +8,7 @@ import type { LodgedView } from '@/lib/services/submissions/submission-view';
 import { answerTo } from '@/lib/services/submissions/finding-answers';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
+import { laterRunWords } from './later-run';
 import { logsOf } from './run-log';
 import { headingsOfResult, noSheet } from './sheet-headings';
 
@@ -70,6 +71,7 @@ export function recordAsView(record: PublishedRecord, lodged: LodgedView | null)
     facts: [`revision ${document.revision}`, `lapses ${formatDay(document.lapsesAt)} unless rerun`],
     claims: headingsOfResult(document.claims, lodged?.revision.sheet ?? noSheet),
     run: { state: 'done', finishedOn: lodged?.run?.state === 'measured' ? formatDay(lodged.run.finishedAt) : null, resultSha256: digest },
+    laterRun: laterRunWords(lodged?.run ?? null, lodged?.laterRun ?? null),
     result: resultOf(document),
     figures: {},
     figuresHref: lodged?.run ? figuresHref(record.submissionId, lodged.run.id) : null,

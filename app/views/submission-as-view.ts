@@ -6,6 +6,7 @@ import { answerTo } from '@/lib/services/submissions/finding-answers';
 import { answeredGuesses } from './answered-guesses';
 import { formatDay } from './dates';
 import { figuresHref } from './figures-href';
+import { laterCheckWords, laterRunWords } from './later-run';
 import { logsOf } from './run-log';
 import { headingsOfResult, headingsOfSheet } from './sheet-headings';
 
@@ -29,9 +30,16 @@ interface Extra {
 
 const measured = (run: RunView | null): ResultDocument | null => (run?.state === 'measured' ? run.result : null);
 
+/** Of a draft, those of the check before stand where the latest has no numbers. */
+const runBehind = (submission: DraftView | LodgedView): RunView | null =>
+  submission.kind === 'draft' ? (submission.check?.before?.run ?? submission.check?.run ?? null) : submission.run;
+
+const laterWords = (submission: DraftView | LodgedView): string | null =>
+  submission.kind === 'draft' ? submission.check && laterCheckWords(submission.check) : laterRunWords(submission.run, submission.laterRun);
+
 /** A draft with its latest check, or a lodged revision with its official run. */
 export function submissionAsView(submission: DraftView | LodgedView, extra: Extra = {}): RecordView {
-  const run = submission.kind === 'draft' ? (submission.check?.run ?? null) : submission.run;
+  const run = runBehind(submission);
   const result = measured(run);
   const { revision } = submission;
   const revisions = submission.kind === 'draft' ? [] : submission.revisions;
@@ -48,6 +56,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     facts: [`revision ${revision.number}`, ...(revision.lodgedAt ? [`lodged ${formatDay(revision.lodgedAt)}`] : [])],
     claims: result ? headingsOfResult(result.claims, revision.sheet) : headingsOfSheet(revision.sheet),
     run: runAsView(run),
+    laterRun: laterWords(submission),
     result,
     figures: extra.figures ?? {},
     figuresHref: run?.state === 'measured' ? figuresHref(submission.id, run.id) : null,

@@ -23,6 +23,7 @@ function Reading({ view }: { readonly view: RecordView }) {
         Of {verdicts.length} {verdicts.length === 1 ? 'claim' : 'claims'} {countVerdicts(verdicts.map((v) => v.verdict))} at the tolerance declared.
         {view.engine && <> Engine {view.engine}{run.finishedOn && `, run ${run.finishedOn}`}.</>}
       </p>
+      {view.laterRun && <p className="mt-1.5 max-w-[62ch] text-ui text-ink-2">{view.laterRun}</p>}
     </>
   );
 }

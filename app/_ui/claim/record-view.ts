@@ -117,6 +117,8 @@ export interface RecordView {
   readonly facts: readonly string[];
   readonly claims: readonly ClaimHeading[];
   readonly run: RunView;
+  /** A later run that has no numbers, in full sentences: those shown stand. */
+  readonly laterRun?: string | null;
   readonly result: ResultDocument | null;
   /** Curves that come with the page; without them `figuresHref` is asked when a claim is opened. */
   readonly figures: FiguresByClaim;

@@ -17,6 +17,8 @@ const columns = {
   fraction: runProgress.fraction,
   doing: runProgress.doing,
   stoppedBecause: runProgress.stoppedBecause,
+  /** The last word of its progress; of a run that ended, when it did. */
+  lastWordAt: runProgress.beatAt,
   outcome: runResults.outcome,
   result: runResults.result,
   resultDigest: runResults.resultDigest,
@@ -43,6 +45,15 @@ export async function findLatestRun(reader: Reader, revisionId: string, kind: Ru
   return row;
 }
 
+/** The newest that has numbers: a later one that was stopped, refused or is under way does not hide it. */
+export async function findMeasuredRun(reader: Reader, revisionId: string, kind: RunKind): Promise<RunRow | undefined> {
+  const [row] = await selectRuns(reader)
+    .where(and(eq(runs.revisionId, revisionId), eq(runs.kind, kind), eq(runResults.outcome, 'measured')))
+    .orderBy(desc(runs.requestedAt))
+    .limit(1);
+  return row;
+}
+
 /** The newest first; what a run found is large and read for those that are shown. */
 export const listRunHeads = (reader: Reader, submissionId: string) =>
   reader.select({ id: runs.id, kind: runs.kind }).from(runs).where(eq(runs.submissionId, submissionId)).orderBy(desc(runs.requestedAt), desc(runs.id));
@@ -55,10 +66,10 @@ export async function findFigures(reader: Reader, runId: string) {
   return row?.figures ?? undefined;
 }
 
-/** How the claims of a run could be read otherwise; none where an earlier version computed it. */
-export async function findReadings(reader: Reader, runId: string): Promise<ReadingsByClaim> {
+/** How the claims of a run could be read otherwise; null where an earlier version computed it and kept none. */
+export async function findReadings(reader: Reader, runId: string): Promise<ReadingsByClaim | null> {
   const [row] = await reader.select({ readings: runResults.readings }).from(runResults).where(eq(runResults.runId, runId));
-  return row?.readings ?? {};
+  return row?.readings ?? null;
 }
 
 /** What the worker computes from. */

@@ -5,7 +5,7 @@ import type { ReadingsByClaim } from '@/lib/pipeline/explain/offered-readings';
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 
 export type RunFinding = { readonly log: readonly RunStep[] } & (
-  | { readonly outcome: 'measured'; readonly engine: string; readonly result: ResultDocument; readonly figures: FiguresByClaim; readonly readings: ReadingsByClaim; readonly resultDigest: string }
+  | { readonly outcome: 'measured'; readonly engine: string; readonly result: ResultDocument; readonly figures: FiguresByClaim; readonly readings: ReadingsByClaim | null; readonly resultDigest: string }
   | { readonly outcome: 'refused'; readonly engine: string; readonly problems: readonly Problem[] }
 );
 

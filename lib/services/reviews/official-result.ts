@@ -1,5 +1,5 @@
 import type { Reader } from '@/db/client';
-import { findLatestRun } from '@/db/reads/runs/run';
+import { findLatestRun, findMeasuredRun } from '@/db/reads/runs/run';
 import { findRevision } from '@/db/reads/submissions/revision';
 import { listLodgedRevisions } from '@/db/reads/submissions/submission-head';
 import type { ResultDocument } from '@/lib/pipeline/result';
@@ -19,6 +19,6 @@ export async function findOfficialResult(reader: Reader, submissionId: string, n
   const wanted = number === undefined ? lodged[0]?.number : lodged.find((r) => r.number === number)?.number;
   const row = wanted === undefined ? undefined : await findRevision(reader, submissionId, wanted);
   if (!row) return undefined;
-  const run = await findLatestRun(reader, row.id, 'official');
+  const run = (await findMeasuredRun(reader, row.id, 'official')) ?? (await findLatestRun(reader, row.id, 'official'));
   return { revisionId: row.id, revision: row.number, title: row.title, runId: run?.id ?? null, result: run?.result ?? null };
 }

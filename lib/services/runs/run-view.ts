@@ -9,6 +9,6 @@ export function viewRun(row: RunRow): RunView {
     if (row.result !== null && row.resultDigest !== null) return { ...head, state: 'measured', finishedAt, result: row.result, resultDigest: row.resultDigest, log: row.log ?? [] };
     return { ...head, state: 'refused', finishedAt, problems: row.problems ?? [] };
   }
-  if (row.state === 'stopped') return { ...head, state: 'stopped', because: row.stoppedBecause ?? 'The run was given up.' };
+  if (row.state === 'stopped') return { ...head, state: 'stopped', stoppedAt: row.lastWordAt.toISOString(), because: row.stoppedBecause ?? 'The run was given up.' };
   return { ...head, state: row.state === 'queued' ? 'queued' : 'running', fraction: row.fraction, doing: row.doing };
 }

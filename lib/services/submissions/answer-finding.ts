@@ -1,6 +1,6 @@
 import { z } from 'zod';
 import type { Transaction } from '@/db/client';
-import { findLatestRun } from '@/db/reads/runs/run';
+import { findMeasuredRun } from '@/db/reads/runs/run';
 import { listFindingAnswers } from '@/db/reads/submissions/finding-answers';
 import type { RevisionRow } from '@/db/reads/submissions/revision';
 import { writeAnswer } from '@/db/writes/submissions/answer-finding';
@@ -37,7 +37,7 @@ export function answerFinding(actor: Actor, submissionId: string, input: Finding
 }
 
 async function noFinding(tx: Transaction, { id }: RevisionRow, { code, where, text }: FindingAnswerInput): Promise<string | null> {
-  const run = await findLatestRun(tx, id, 'check');
+  const run = await findMeasuredRun(tx, id, 'check');
   const found = run?.result?.claims.some((claim) => claim.findings.some((f) => f.code === code && f.where === where && f.text === text));
   return found ? null : 'The latest check has no such finding. Look at its findings again; they may have changed with a later check.';
 }

@@ -1,4 +1,4 @@
-import type { AuthorView, DraftSheet, FileView, RunView } from './submission-view';
+import type { AuthorView, CheckView, DraftSheet, FileView } from './submission-view';
 import { inputsDigest } from '@/lib/services/runs/inputs-digest';
 import { answerTo, type FindingAnswer } from './finding-answers';
 
@@ -8,7 +8,7 @@ interface Draft {
   readonly files: readonly Pick<FileView, 'name' | 'sha256'>[];
   readonly answers: readonly FindingAnswer[];
   readonly authors: readonly AuthorView[];
-  readonly check: { readonly run: RunView; readonly current: boolean } | null;
+  readonly check: Pick<CheckView, 'run' | 'current' | 'before'> | null;
 }
 
 export const isCurrent = (checkedDigest: string, sheet: DraftSheet, files: readonly Pick<FileView, 'name' | 'sha256'>[]): boolean =>
@@ -26,10 +26,11 @@ export function beforeLodging(draft: Draft): readonly string[] {
 
 function fromCheck(check: Draft['check'], answers: readonly FindingAnswer[]): readonly string[] {
   if (check === null) return ['Nothing has been checked yet. Run a check.'];
-  const { run, current } = check;
-  if (run.state === 'queued' || run.state === 'running') return ['The check is still running. Wait for it to end.'];
+  if (check.run.state === 'queued' || check.run.state === 'running') return ['The check is still running. Wait for it to end.'];
+  // One that was stopped says nothing against numbers of the very same sheet and files.
+  const { run, current } = check.run.state === 'stopped' && check.before?.current ? check.before : check;
   if (!current) return ['Files, settings or claims have changed since the last check. Check again.'];
-  if (run.state === 'stopped') return ['The last check ended before there was a number. Check again.'];
+  if (run.state === 'stopped') return ['The last check ended before there was a number of what is saved now. Check again.'];
   if (run.state === 'refused') return [`The check could not read the sheet or a file: ${run.problems.length} to mend, listed with the check.`];
   if (run.state !== 'measured') return [];
   const found = run.result.claims.flatMap((claim) => claim.findings.map((finding) => ({ claim: claim.id, ...finding })));

@@ -1,5 +1,5 @@
 import { countUnfinishedRuns } from '@/db/reads/runs/unfinished-runs';
-import { findLatestRun } from '@/db/reads/runs/run';
+import { findMeasuredRun, findReadings } from '@/db/reads/runs/run';
 import { findRevision, listRevisionFiles } from '@/db/reads/submissions/revision';
 import { getSubmissionHead } from '@/db/reads/submissions/submission-head';
 import { moveSubmission } from '@/db/writes/submissions/move-submission';
@@ -16,7 +16,7 @@ import { LODGED_ALREADY } from './update-draft';
 /** Runs that one author may have under way, so that nobody's queue holds up the others. */
 const UNFINISHED_AT_MOST = 3;
 
-/** Asks for the server's reading before lodging. When nothing changed since the last one, that stands. */
+/** Asks for the server's reading before lodging. When nothing changed since the last that has numbers, and that keeps all a check keeps now, it stands. */
 export function checkDraft(actor: Actor, submissionId: string): Promise<Outcome<{ readonly runId: string }>> {
   return actOnSubmission({ actor, action: 'submission.check', submissionId }, async ({ tx, grant, facts, note }) => {
     if (facts.currentLodged) return fail('conflict', LODGED_ALREADY);
@@ -25,9 +25,9 @@ export function checkDraft(actor: Actor, submissionId: string): Promise<Outcome<
     if (!row) return { ok: false, error: NOT_FOUND };
     const sheet = asDraftSheet(row.sheet, row);
     if (sheet.claims.length === 0) return fail('precondition', 'No number is claimed yet, so there is nothing to check. Add a claim.');
-    const last = await findLatestRun(tx, row.id, 'check');
-    const stands = last?.outcome === 'measured' && last.engine === ENGINE_VERSION && isCurrent(last.inputsDigest, sheet, await listRevisionFiles(tx, row.id));
-    if (last && stands) return ok({ runId: last.id });
+    const last = await findMeasuredRun(tx, row.id, 'check');
+    const stands = last?.engine === ENGINE_VERSION && isCurrent(last.inputsDigest, sheet, await listRevisionFiles(tx, row.id));
+    if (last && stands && (await findReadings(tx, last.id)) !== null) return ok({ runId: last.id });
     if ((await countUnfinishedRuns(tx, ownerId)) >= UNFINISHED_AT_MOST)
       return fail('limit', `${UNFINISHED_AT_MOST} runs of yours are under way. Wait for one to end.`);
     if (!(await moveSubmission(tx, grant, { to: 'checking' }))) return fail('conflict', 'The submission has moved on meanwhile. Reload to see where it stands.');

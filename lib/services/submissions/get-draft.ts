@@ -1,11 +1,10 @@
-import { findLatestRun } from '@/db/reads/runs/run';
 import { findRevision } from '@/db/reads/submissions/revision';
 import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { readSubmission } from '@/lib/services/act';
 import { NOT_FOUND, type Outcome } from '@/lib/services/app-error';
-import { viewRun } from '@/lib/services/runs/run-view';
-import { beforeLodging, isCurrent } from './before-lodging';
+import { beforeLodging } from './before-lodging';
+import { findCheck } from './find-check';
 import type { DraftView } from './submission-view';
 import { viewCandidateAnswers, viewHead, viewRevision } from './view-parts';
 
@@ -16,8 +15,7 @@ export function getDraft(actor: Actor, submissionId: string): Promise<Outcome<Dr
     const row = await findRevision(reader, submissionId, currentRevision);
     if (!row) return { ok: false, error: NOT_FOUND };
     const revision = await viewRevision(reader, row);
-    const found = await findLatestRun(reader, row.id, 'check');
-    const check = found ? { run: viewRun(found), current: isCurrent(found.inputsDigest, revision.sheet, revision.files) } : null;
+    const check = await findCheck(reader, revision);
     return ok({ kind: 'draft', ...head, candidateAnswers: await viewCandidateAnswers(reader, submissionId), revision, check, beforeLodging: beforeLodging({ ...revision, authors: head.authors, check }) });
   });
 }

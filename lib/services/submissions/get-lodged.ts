@@ -1,5 +1,5 @@
 import type { Reader } from '@/db/client';
-import { findLatestRun } from '@/db/reads/runs/run';
+import { findLatestRun, findMeasuredRun } from '@/db/reads/runs/run';
 import { findLatestLodged, findRevision } from '@/db/reads/submissions/revision';
 import { listLodgedRevisions } from '@/db/reads/submissions/submission-head';
 import { ok } from '@/lib/kernel/result';
@@ -25,7 +25,8 @@ async function viewLodged(kind: LodgedView['kind'], reader: Reader, actor: Actor
   const row = number === undefined ? await findLatestLodged(reader, facts.submissionId) : await findRevision(reader, facts.submissionId, number);
   if (!row?.lodgedAt) return { ok: false, error: NOT_FOUND };
   const { currentRevision: _current, ...head } = await viewHead(reader, actor, facts);
-  const run = await findLatestRun(reader, row.id, 'official');
+  const latest = await findLatestRun(reader, row.id, 'official');
+  const run = latest?.outcome === 'measured' ? latest : ((await findMeasuredRun(reader, row.id, 'official')) ?? latest);
   const lodged = await listLodgedRevisions(reader, facts.submissionId);
   return ok({
     kind,
@@ -35,5 +36,6 @@ async function viewLodged(kind: LodgedView['kind'], reader: Reader, actor: Actor
     revision: await viewRevision(reader, row),
     revisions: lodged.flatMap((r) => (r.lodgedAt ? [{ number: r.number, lodgedAt: r.lodgedAt.toISOString() }] : [])),
     run: run ? viewRun(run) : null,
+    laterRun: latest && latest.id !== run?.id ? viewRun(latest) : null,
   });
 }

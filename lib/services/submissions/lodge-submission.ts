@@ -1,5 +1,4 @@
 import type { Transaction } from '@/db/client';
-import { findLatestRun } from '@/db/reads/runs/run';
 import { findRevision, type RevisionRow } from '@/db/reads/submissions/revision';
 import { getSubmissionHead, listAuthors } from '@/db/reads/submissions/submission-head';
 import { freezeRevision } from '@/db/writes/submissions/freeze-revision';
@@ -8,8 +7,8 @@ import { ok } from '@/lib/kernel/result';
 import type { Actor } from '@/lib/policy/actor';
 import { actOnSubmission } from '@/lib/services/act';
 import { fail, NOT_FOUND, type Outcome } from '@/lib/services/app-error';
-import { viewRun } from '@/lib/services/runs/run-view';
-import { beforeLodging, isCurrent } from './before-lodging';
+import { beforeLodging } from './before-lodging';
+import { findCheck } from './find-check';
 import { runRevision } from './run-draft';
 import { namesContent, versionMoved } from './submission-tag';
 import type { RevisionView } from './submission-view';
@@ -36,12 +35,11 @@ export function lodgeSubmission(actor: Actor, submissionId: string, ifMatch: rea
 }
 
 async function obstaclesOf(tx: Transaction, row: RevisionRow, revision: RevisionView): Promise<readonly string[]> {
-  const found = await findLatestRun(tx, row.id, 'check');
   const authors = await listAuthors(tx, row.submissionId);
   return beforeLodging({
     ...revision,
     authors: authors.map((a) => ({ name: a.name, affiliation: a.affiliation, role: a.role, confirmed: a.confirmedAt !== null })),
-    check: found ? { run: viewRun(found), current: isCurrent(found.inputsDigest, revision.sheet, revision.files) } : null,
+    check: await findCheck(tx, revision),
   });
 }
 

@@ -1,7 +1,7 @@
 import { z } from 'zod';
 import { SUBMISSION_STATES } from '@/lib/policy/submission-state';
 import { candidateAnswerSchema } from '@/lib/services/candidates/candidate-answers';
-import { runSchema } from '@/lib/services/runs/run-schema';
+import { checkSchema, runSchema } from '@/lib/services/runs/run-schema';
 import type { UploadView } from '@/lib/services/files/upload-view';
 import type { Allowed, DraftView, FileView, LodgedView, RevisionView, SubmissionLine } from './submission-view';
 
@@ -49,10 +49,10 @@ const head = {
 };
 
 export const draftSchema = z
-  .object({ kind: z.literal('draft'), ...head, check: z.object({ run: runSchema, current: z.boolean() }).nullable(), beforeLodging: z.array(z.string()).describe('What stands in the way of lodging; empty when it is open.') })
+  .object({ kind: z.literal('draft'), ...head, check: checkSchema.nullable(), beforeLodging: z.array(z.string()).describe('What stands in the way of lodging; empty when it is open.') })
   .meta({ id: 'Draft' });
 export const lodgedSchema = z
-  .object({ kind: z.enum(['review', 'public']), ...head, revisions: z.array(z.object({ number: z.int(), lodgedAt: z.string() })), run: runSchema.nullable() })
+  .object({ kind: z.enum(['review', 'public']), ...head, revisions: z.array(z.object({ number: z.int(), lodgedAt: z.string() })), run: runSchema.nullable(), laterRun: runSchema.nullable().describe('A later official run, of another engine, that has no numbers; those of `run` stand.') })
   .meta({ id: 'Lodged' });
 export const submissionSchema = z.union([draftSchema, lodgedSchema]).meta({ id: 'Submission' });
 

@@ -46,11 +46,23 @@ export type RunView = {
 } & (
   | { readonly state: 'queued' | 'running'; readonly fraction: number; readonly doing: string }
   /** Given up after three tries, or stopped by the one who asked; the sentence says what a person can do. */
-  | { readonly state: 'stopped'; readonly because: string }
+  | { readonly state: 'stopped'; readonly stoppedAt: string; readonly because: string }
   /** The sheet or a file could not be read; every problem is listed. */
   | { readonly state: 'refused'; readonly finishedAt: string; readonly problems: readonly Problem[] }
   | { readonly state: 'measured'; readonly finishedAt: string; readonly result: ResultDocument; readonly resultDigest: string; readonly log: readonly { readonly atMs: number; readonly doing: string }[] }
 );
+
+export type MeasuredRun = Extract<RunView, { readonly state: 'measured' }>;
+
+/** The latest check of a draft, and whether sheet and files are still what it checked. */
+export interface CheckView {
+  readonly run: RunView;
+  readonly current: boolean;
+  /** Which author stopped it; null where nobody did. */
+  readonly stoppedBy: string | null;
+  /** The check before it whose numbers stand, where the latest has none of its own. */
+  readonly before: { readonly run: MeasuredRun; readonly current: boolean } | null;
+}
 
 /** One numbered edition with its own computation. */
 export interface RevisionView {
@@ -100,8 +112,8 @@ interface SubmissionHead {
 export interface DraftView extends SubmissionHead {
   readonly kind: 'draft';
   readonly revision: RevisionView;
-  /** The latest check, and whether sheet and files are still what it checked. */
-  readonly check: { readonly run: RunView; readonly current: boolean } | null;
+  /** Null before any. A check of another save that came to nothing is passed over for one of what is saved now. */
+  readonly check: CheckView | null;
   /** What stands in the way of lodging, as sentences; empty when *Lodge* is open. */
   readonly beforeLodging: readonly string[];
 }
@@ -111,8 +123,10 @@ export interface LodgedView extends SubmissionHead {
   readonly kind: 'review' | 'public';
   readonly revision: RevisionView;
   readonly revisions: readonly { readonly number: number; readonly lodgedAt: string }[];
-  /** The official run of this revision. */
+  /** The official run of this revision: the latest with numbers, else the latest. */
   readonly run: RunView | null;
+  /** A later one, of another engine, that has no numbers: under way, refused or given up. Those of `run` stand. */
+  readonly laterRun: RunView | null;
 }
 
 export type SubmissionView = DraftView | LodgedView;

@@ -1,5 +1,5 @@
 import type { Reader } from '@/db/client';
-import { findLatestRun, type RunRow } from '@/db/reads/runs/run';
+import { findMeasuredRun, type RunRow } from '@/db/reads/runs/run';
 import { findLatestLodged, findRevision, listRevisionFiles, type RevisionRow } from '@/db/reads/submissions/revision';
 import { getSubmissionHead } from '@/db/reads/submissions/submission-head';
 import { ok } from '@/lib/kernel/result';
@@ -16,15 +16,15 @@ export interface Base {
 
 /**
  * The revision asked for, else the newest lodged one, else the authors' draft. A draft is its authors'
- * alone, and stands beside its latest check: with another sheet meanwhile, two things would differ.
+ * alone, and stands beside the latest check that has numbers: with another sheet meanwhile, two things would differ.
  */
 export async function findBase(tx: Reader, facts: SubmissionFacts, revision: number | undefined): Promise<Outcome<Base>> {
   const row = await revisionOf(tx, facts, revision);
   if (!row || (row.lodgedAt === null && facts.authorship === null)) return { ok: false, error: NOT_FOUND };
-  const run = await findLatestRun(tx, row.id, row.lodgedAt === null ? 'check' : 'official');
-  if (run?.outcome !== 'measured') return fail('precondition', row.lodgedAt === null ? 'There is no number of this draft to vary yet. Check it first.' : 'There are no recomputed numbers of this revision to vary.');
+  const run = await findMeasuredRun(tx, row.id, row.lodgedAt === null ? 'check' : 'official');
+  if (!run) return fail('precondition', row.lodgedAt === null ? 'There is no number of this draft to vary yet. Check it first.' : 'There are no recomputed numbers of this revision to vary.');
   if (row.lodgedAt === null && !isCurrent(run.inputsDigest, asDraftSheet(row.sheet, row), await listRevisionFiles(tx, row.id)))
-    return fail('precondition', 'The draft has changed since its last check, so the number beside would be another’s. Check it again, then vary it.');
+    return fail('precondition', 'The draft has changed since the last check that has numbers, so the number beside would be another’s. Check it again, then vary it.');
   return ok({ row, run });
 }
 

@@ -1,6 +1,6 @@
 import { database, type Reader } from '@/db/client';
 import { findNewestRecord } from '@/db/reads/records/record';
-import { findLatestRun, findRun, type RunRow } from '@/db/reads/runs/run';
+import { findMeasuredRun, findRun, type RunRow } from '@/db/reads/runs/run';
 import { findVariation, findVariedSubmission, type VariationRow } from '@/db/reads/variations/variations';
 import { getSubmissionHead } from '@/db/reads/submissions/submission-head';
 import { findRevision } from '@/db/reads/submissions/revision';
@@ -50,7 +50,7 @@ export function getVariationOf(actor: Actor, submissionId: string, variationId: 
 
 /** Rows of earlier versions do not name it: they stood beside the official run. */
 const baseRunOf = (reader: Reader, row: VariationRow): Promise<RunRow | undefined> =>
-  row.baseRunId === null ? findLatestRun(reader, row.revisionId, 'official') : findRun(reader, row.baseRunId);
+  row.baseRunId === null ? findMeasuredRun(reader, row.revisionId, 'official') : findRun(reader, row.baseRunId);
 
 function variedRun(row: RunRow, claimId: string): VariedRun {
   const run = viewRun(row);

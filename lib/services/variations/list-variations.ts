@@ -21,8 +21,8 @@ export async function listVariations(actor: Actor, submissionId: string, revisio
   return readings.ok ? ok({ variations: page.value.items, left: page.value.left, readings: readings.value }) : readings;
 }
 
-/** None where the revision has no number to vary, or was measured before readings were kept. */
-function readingsFor(actor: Actor, submissionId: string, revision: number | undefined): Promise<Outcome<ReadingsByClaim>> {
+/** None where the revision has no number to vary; null where it was measured before readings were kept. */
+function readingsFor(actor: Actor, submissionId: string, revision: number | undefined): Promise<Outcome<ReadingsByClaim | null>> {
   return readSubmission({ actor, action: 'submission.view-variations', submissionId }, async ({ reader, facts }) => {
     const base = await findBase(reader, facts, revision);
     return ok(base.ok ? await findReadings(reader, base.value.run.id) : {});
@@ -33,8 +33,8 @@ function readingsFor(actor: Actor, submissionId: string, revision: number | unde
 export async function pageWithReadings(actor: Actor, submissionId: string, { claimId, ...ask }: PageAsk & { readonly claimId?: string }): Promise<Outcome<Page<VariationView> & { readonly left: number; readonly readings: readonly OfferedReading[] }>> {
   const page = await pageVariations(actor, submissionId, ask);
   if (!page.ok) return page;
-  const readings = claimId === undefined ? ok<ReadingsByClaim>({}) : await readingsFor(actor, submissionId, undefined);
-  return readings.ok ? ok({ ...page.value, readings: readingsOfClaim(readings.value, claimId ?? '') }) : readings;
+  const readings = claimId === undefined ? ok<ReadingsByClaim | null>({}) : await readingsFor(actor, submissionId, undefined);
+  return readings.ok ? ok({ ...page.value, readings: readingsOfClaim(readings.value ?? {}, claimId ?? '') }) : readings;
 }
 
 export function pageVariations(actor: Actor, submissionId: string, ask: PageAsk): Promise<Outcome<Page<VariationView> & Pick<VariationList, 'left'>>> {

@@ -51,7 +51,7 @@ export function requestVariation(actor: Actor, submissionId: string, input: z.ou
     const varied = varySheet(declared, input.claimId, input.changes);
     const sheet = varied.ok ? readable(varied.value, input.changes, declared) : varied;
     if (!sheet.ok) return sheet;
-    const read = readingsOf(input.changes, readingsOfClaim(await findReadings(tx, run.id), input.claimId));
+    const read = readingsOf(input.changes, readingsOfClaim((await findReadings(tx, run.id)) ?? {}, input.claimId));
     if (!read.ok) return read;
     const { readings: _ids, ...changes } = input.changes;
     const kept = { ...changes, ...(read.value.length > 0 && { readings: read.value }) };

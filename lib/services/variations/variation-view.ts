@@ -32,8 +32,8 @@ export interface VariationList {
   readonly variations: readonly VariationView[];
   /** How many more may be asked for now. */
   readonly left: number;
-  /** How each claim may be read otherwise, as the base run offers it. */
-  readonly readings: ReadingsByClaim;
+  /** How each claim may be read otherwise, as the base run offers it; null where an earlier version measured that and kept none. */
+  readonly readings: ReadingsByClaim | null;
 }
 
 /** How its computation stands, without the moments that could tell who asked. */

@@ -25,7 +25,7 @@ export async function storeOldResult(worker: Database, submissionId: string, off
   await database().insert(runProgress).values({ runId: made.id });
   const result = aged(newer.result, offBy);
   await worker.transaction(async (tx) => {
-    await recordResult(tx, made.id, { outcome: 'measured', engine: OLD_ENGINE, result, figures: {}, readings: {}, resultDigest: digestOf(result), log: [] });
+    await recordResult(tx, made.id, { outcome: 'measured', engine: OLD_ENGINE, result, figures: {}, readings: null, resultDigest: digestOf(result), log: [] });
     await endProgress(tx, { runId: made.id, submissionId }, { state: 'finished' });
   });
 }

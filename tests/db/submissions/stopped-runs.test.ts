@@ -5,8 +5,10 @@ import { err } from '@/lib/kernel/result';
 import type { SignedInActor } from '@/lib/policy/actor';
 import type { SubmissionGrant } from '@/lib/policy/grant';
 import { stopRun } from '@/lib/services/runs/stop-run';
+import { updateDraft } from '@/lib/services/submissions/update-draft';
 import { checkDraft } from '@/lib/services/submissions/check-draft';
 import { getDraft } from '@/lib/services/submissions/get-draft';
+import { getReview } from '@/lib/services/submissions/get-lodged';
 import { lodgeSubmission } from '@/lib/services/submissions/lodge-submission';
 import { requestVariation } from '@/lib/services/variations/request-variation';
 import { createS3Store } from '@/lib/storage/s3-store';
@@ -60,6 +62,28 @@ describe('a run that is wanted no longer', () => {
   });
 });
 
+describe('the numbers of the check before', () => {
+  const allow = async (tolerance: unknown): Promise<void> => {
+    const { revision: { version, title, statement, sheet: { waveforms, noise, claims } } } = must(await getDraft(author, id));
+    must(await updateDraft(author, id, { version, title, statement, sheet: { waveforms, noise, claims: claims.map((claim) => ({ ...claim, tolerance })) } as never }));
+  };
+
+  it('stand where a later one is stopped, with who stopped it, and count again for the save they are of', async () => {
+    const { revision: { sheet: { claims: [claim] } }, check: first } = must(await getDraft(author, id));
+    await allow(0.4);
+    const { runId } = must(await checkDraft(author, id));
+    must(await stopRun(author, id, runId));
+    await desk.runAll();
+    const stopped = must(await getDraft(author, id));
+    expect(stopped.check).toMatchObject({ run: { id: runId, state: 'stopped', stoppedAt: expect.stringMatching(/^20/) }, current: true, stoppedBy: 'T. Marrable', before: { run: { id: first?.run.id, state: 'measured' }, current: false } });
+    expect(stopped.beforeLodging).toEqual([expect.stringContaining('of what is saved now')]);
+    await allow(claim?.['tolerance']);
+    const again = must(await getDraft(author, id));
+    expect([again.check, again.beforeLodging]).toEqual([{ run: first?.run, current: true, stoppedBy: null, before: null }, []]);
+    expect(must(await checkDraft(author, id))).toEqual({ runId: first?.run.id });
+  });
+});
+
 describe('a run of others', () => {
   it('is not stopped: a check is its authors’, a variation belongs to who asked, and an official run goes to its end', async () => {
     const variation = must(await requestVariation(author, id, { claimId: 'C1', changes: { settings: { fLowHz: 30 } }, note: '' }));
@@ -89,6 +113,14 @@ describe('a run of others', () => {
       }
     });
     expect([all.some(({ kind }) => kind === 'official'), await stopped()]).toEqual([true, before]);
+  });
+
+  it('leaves the official numbers in sight where one of a later engine is given up', async () => {
+    const before = must(await getReview(author, id));
+    const [later] = await desk.sql<{ id: string }>(`insert into runs (submission_id, revision_id, kind, engine, sheet, inputs, inputs_digest) select submission_id, revision_id, kind, '99.0.0', sheet, inputs, inputs_digest from runs where kind = 'official' returning id`);
+    await desk.sql(`insert into run_progress (run_id, state, stopped_because) values ($1, 'stopped', 'It broke off.')`, later?.id);
+    const { run, laterRun } = must(await getReview(author, id));
+    expect([before.laterRun, run, laterRun]).toEqual([null, before.run, expect.objectContaining({ id: later?.id, state: 'stopped', because: 'It broke off.' })]);
   });
 
   it('leaves a word that the database itself never changes', async () => {

@@ -145,7 +145,7 @@ describe('a convention read otherwise', () => {
   const read = (changes: { readings?: string[]; mask?: { from: number; to: number } }) => requestVariation(author, id, { claimId: 'C1', changes, note: '' });
 
   it('is one of those that the base run offers, and is kept in its words', async () => {
-    const offered = must(await listVariations(author, id, 1)).readings['C1'] ?? [];
+    const offered = must(await listVariations(author, id, 1)).readings?.['C1'] ?? [];
     const perCent = offered.find((reading) => reading.id === 'C55:per-cent');
     expect(perCent).toEqual({ id: 'C55:per-cent', convention: 'C55', clause: 'it is given in per cent', says: null, factor: 100 });
     const { variationId } = must(await read({ readings: ['C55:per-cent'] }));
