@@ -1,6 +1,8 @@
+import type { ReadAgainst } from '@/app/_ui/math/format-uncertainty';
 import { samePlace, type Place } from '@/lib/kernel/place';
 import type { ResultClaim, ResultPoint } from '@/lib/pipeline/result';
 import type { VariationChanges } from '@/lib/services/variations/variation-view';
+import { toleranceInUnit } from './varied-number';
 
 /** One place of a claim: the official number, the varied one, and how far they are apart. */
 export interface ComparedPoint {
@@ -9,6 +11,8 @@ export interface ComparedPoint {
   readonly varied: Pick<ResultPoint, 'value' | 'expandedUncertainty'> | null;
   /** Varied − official, or the logarithm of their ratio on that scale; null where either is missing. */
   readonly apart: number | null;
+  /** T of the official number in its own unit, and the distance in it: the digits both are read to. */
+  readonly against: ReadAgainst;
   /** The same in units of the official T; null where there is none. */
   readonly inTolerances: number | null;
 }
@@ -28,7 +32,8 @@ function compared(at: Place, official: ResultPoint | undefined, varied: ResultPo
   const raw = official && varied && official.value !== null && varied.value !== null ? difference(varied.value, official.value, scale) : null;
   const apart = raw !== null && Number.isFinite(raw) ? raw : null;
   const tolerance = official?.tolerance ?? null;
-  return { at, official: official ?? null, varied: varied ?? null, apart, inTolerances: apart !== null && tolerance !== null && tolerance > 0 ? apart / tolerance : null };
+  const against = { tolerance: toleranceInUnit(tolerance ?? varied?.tolerance ?? null, scale, official?.value ?? varied?.value ?? null), apart: official?.value != null && varied?.value != null ? varied.value - official.value : null };
+  return { at, official: official ?? null, varied: varied ?? null, apart, against, inTolerances: apart !== null && tolerance !== null && tolerance > 0 ? apart / tolerance : null };
 }
 
 /** Every place of either, those of the variation first to last, then what only the official run has. */

@@ -1,10 +1,10 @@
 import { formatAt } from '@/app/_ui/claim/setting-names';
 import { formatNumber } from '@/app/_ui/math/format-number';
-import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
 import { unitText } from '@/app/_ui/math/units';
 import { Table } from '@/app/_ui/primitives/table';
 import type { ComparedPoint } from './compare';
 import { inTolerancesText } from './variation-words';
+import { VariedNumber } from './varied-number';
 
 interface TableProps {
   readonly claimId: string;
@@ -23,26 +23,27 @@ const apartText = (apart: number | null, { scale, unit }: Pick<TableProps, 'scal
 /** The number that stands beside the one that would be, place by place. */
 export function ComparedTable({ claimId, points, unit, scale, waiting, officialWord }: TableProps) {
   const swept = points.some((p) => Object.keys(p.at).length > 0);
-  const numberOf = (side: ComparedPoint['official'], none: string) => (side ? formatWithUncertainty(side.value, side.expandedUncertainty, unit) : none);
+  const title = officialWord.replace(/^./, (c) => c.toUpperCase());
+  const numberOf = (side: ComparedPoint['official'], { against }: ComparedPoint, none: string) => (side ? <VariedNumber value={side.value} u={side.expandedUncertainty} unit={unit} against={against} /> : none);
   return (
-    <Table caption={`${claimId}: ${officialWord} and varied numbers`}>
-      <thead>
-        <tr>
-          {swept && <th scope="col">At</th>}
-          <th scope="col" className="num">{officialWord.replace(/^./, (c) => c.toUpperCase())} ± <i>U</i></th>
-          <th scope="col" className="num">Varied ± <i>U</i></th>
-          <th scope="col" className="num">Apart by</th>
-          <th scope="col" className="num"><abbr title="the claim’s tolerance">In units of <i>T</i></abbr></th>
+    <Table className="stacks" caption={`${claimId}: ${officialWord} and varied numbers`}>
+      <thead role="rowgroup">
+        <tr role="row">
+          {swept && <th role="columnheader" scope="col">At</th>}
+          <th role="columnheader" scope="col" className="num">{title} ± <i>U</i></th>
+          <th role="columnheader" scope="col" className="num">Varied ± <i>U</i></th>
+          <th role="columnheader" scope="col" className="num">Apart by</th>
+          <th role="columnheader" scope="col" className="num"><abbr title="the claim’s tolerance">In units of <i>T</i></abbr></th>
         </tr>
       </thead>
-      <tbody>
+      <tbody role="rowgroup">
         {points.map((point, i) => (
-          <tr key={i}>
-            {swept && <th scope="row" className="font-normal!">{formatAt(point.at) || 'one number'}</th>}
-            <td className="num">{numberOf(point.official, 'no number here')}</td>
-            <td className="num font-semibold">{numberOf(point.varied, waiting ?? 'not varied')}</td>
-            <td className="num">{apartText(point.apart, { scale, unit })}</td>
-            <td className="num">{point.apart === null ? '—' : inTolerancesText(point.inTolerances)}</td>
+          <tr key={i} role="row">
+            {swept && <th role="rowheader" scope="row" className="font-normal!">{formatAt(point.at) || 'one number'}</th>}
+            <td role="cell" className="num" data-l={`${title} ± U`}>{numberOf(point.official, point, 'no number here')}</td>
+            <td role="cell" className="num font-semibold" data-l="Varied ± U">{numberOf(point.varied, point, waiting ?? 'not varied')}</td>
+            <td role="cell" className="num" data-l="Apart by">{apartText(point.apart, { scale, unit })}</td>
+            <td role="cell" className="num" data-l="In units of T">{point.apart === null ? '—' : inTolerancesText(point.inTolerances)}</td>
           </tr>
         ))}
       </tbody>

@@ -5,9 +5,8 @@ import { SettingControl } from '@/app/(desk)/compose/[id]/setting-control';
 import { settingText } from '@/app/(desk)/compose/[id]/claim-fields';
 import { Trouble } from '@/app/(desk)/act-parts';
 import { useAct } from '@/app/(desk)/use-act';
-import { formatAt, formatSetting } from '@/app/_ui/claim/setting-names';
+import { formatAt, formatSetting, settingLabel } from '@/app/_ui/claim/setting-names';
 import { readable } from '@/app/_ui/math/format-number';
-import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextareaField } from '@/app/_ui/primitives/control';
 import { useOnline } from '@/app/_ui/primitives/offline-strap';
@@ -17,6 +16,7 @@ import { atOnce } from './at-once';
 import { changesFrom, fieldsFrom, isUnchanged, type VariationFields } from './variation-fields';
 import { AnotherReading, ChosenReadings, MaskFields, type PartProps } from './variation-readings';
 import type { VariationSource } from './variation-source';
+import { toleranceInUnit, VariedNumber } from './varied-number';
 
 /** Places of a sweep that are told at once. */
 const SHOWN_AT_ONCE = 6;
@@ -65,10 +65,10 @@ function ChosenSettings({ source, fields, onFields }: PartProps) {
     <div className="grid gap-3 sm:grid-cols-2">
       {rows.map((row) => (
         <div key={row.name} className="grid content-start gap-1">
-          <SettingControl row={row} undeclared={row.name in source.declared ? 'not declared' : `assumed: ${row.houseDefault}`} name={`${source.claimId}-vary-${row.name}`} value={fields.settings[row.name] ?? ''} onChange={(e) => onFields({ ...fields, settings: { ...fields.settings, [row.name]: e.target.value } })} />
+          <SettingControl row={row} title={settingLabel(row.name)} undeclared={row.name in source.declared ? 'not declared' : `assumed: ${row.houseDefault}`} name={`${source.claimId}-vary-${row.name}`} value={fields.settings[row.name] ?? ''} onChange={(e) => onFields({ ...fields, settings: { ...fields.settings, [row.name]: e.target.value } })} />
           <p className="flex flex-wrap items-center gap-x-3 text-small text-ink-2">
             <span>{standingWords(source, row.name)}</span>
-            <Button size="low" tone="quiet" aria-label={`Leave ${row.name} as it is`} onClick={() => onFields({ ...fields, settings: without(fields.settings, row.name) })}>Leave as it is</Button>
+            <Button size="low" tone="quiet" aria-label={`Leave ${settingLabel(row.name)} as it is`} onClick={() => onFields({ ...fields, settings: without(fields.settings, row.name) })}>Leave as it is</Button>
           </p>
         </div>
       ))}
@@ -95,7 +95,7 @@ function AnotherSetting({ source, fields, onFields }: PartProps) {
   return (
     <SelectField label="Change a setting" value="" onChange={(e) => { if (e.target.value) choose(e.target.value); }}>
       <option value="">choose one</option>
-      {others.map((row) => <option key={row.name} value={row.name}>{row.name}{row.name in source.declared ? ', declared' : row.name === source.swept ? ', swept' : ''}</option>)}
+      {others.map((row) => <option key={row.name} value={row.name}>{settingLabel(row.name)} ({row.name}){row.name in source.declared ? ', declared' : row.name === source.swept ? ', swept' : ''}</option>)}
     </SelectField>
   );
 }
@@ -110,6 +110,12 @@ function CurveChoice({ noise, value, onValue }: { readonly noise: NonNullable<Va
   );
 }
 
+/** Both numbers to the same digits: those of the official one's tolerance. */
+function againstOf({ points, quantity }: VariationSource, i: number, value: number | null) {
+  const official = points[i];
+  return { tolerance: toleranceInUnit(official?.tolerance ?? null, quantity.scale, official?.value ?? null), apart: official?.value != null && value !== null ? value - official.value : null };
+}
+
 /** Where the change is a factor, the number is there while one types; the rerun follows when it is asked for. */
 function AtOnceLine({ source, changes }: { readonly source: VariationSource; readonly changes: ReturnType<typeof changesFrom> }) {
   const known = atOnce({ ...source, quantity: source.quantity.id }, changes);
@@ -119,7 +125,7 @@ function AtOnceLine({ source, changes }: { readonly source: VariationSource; rea
       {known && (
         <div className="rounded border border-hair-2 bg-sheet px-3 py-2">
           <p><strong>At once</strong>, by {known.factor === null ? 'a factor at each place' : `the factor ${readable(known.factor, 6)}`} on the {source.isDraft ? 'checked' : 'official'} number; nothing was rerun:</p>
-          <ul>{known.points.slice(0, SHOWN_AT_ONCE).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.official, source.points[i]?.expandedUncertainty ?? null, source.unit)} → {formatWithUncertainty(p.value, p.expandedUncertainty, source.unit)}</li>)}</ul>
+          <ul>{known.points.slice(0, SHOWN_AT_ONCE).map((p, i) => <li key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}<VariedNumber value={p.official} u={source.points[i]?.expandedUncertainty ?? null} unit={source.unit} against={againstOf(source, i, p.value)} /> → <VariedNumber value={p.value} u={p.expandedUncertainty} unit={source.unit} against={againstOf(source, i, p.value)} /></li>)}</ul>
           {more > 0 && <p className="text-small text-ink-2">and at {more} more {more === 1 ? 'place' : 'places'}</p>}
         </div>
       )}

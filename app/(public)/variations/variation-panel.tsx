@@ -9,12 +9,13 @@ import { Disclosure } from '@/app/_ui/primitives/disclosure';
 import { ProgressBar } from '@/app/_ui/primitives/progress';
 import { Table } from '@/app/_ui/primitives/table';
 import { formatAt } from '@/app/_ui/claim/setting-names';
-import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
+import { samePlace, type Place } from '@/lib/kernel/place';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { VariationView } from '@/lib/services/variations/variation-view';
 import type { AskedVariation } from './asked-variation';
 import { VariationForm } from './variation-form';
 import type { VariationSource } from './variation-source';
+import { toleranceInUnit, VariedNumber } from './varied-number';
 import { changesInWords, SEEN_BY } from './variation-words';
 
 interface PanelProps {
@@ -50,14 +51,14 @@ function Saved({ source, own, now }: { readonly source: VariationSource; readonl
     <Table caption={`Your variations of ${source.claimId}`}>
       <thead><tr><th scope="col">Changed</th><th scope="col">Result</th><th scope="col">Seen by</th></tr></thead>
       <tbody>
-        {source.points.length === 1 && only && <tr><th scope="row" className="font-normal!">nothing: the {source.isDraft ? 'checked' : 'official'} number</th><td>{formatWithUncertainty(only.value, only.expandedUncertainty, source.unit)}</td><td /></tr>}
+        {source.points.length === 1 && only && <tr><th scope="row" className="font-normal!">nothing: the {source.isDraft ? 'checked' : 'official'} number</th><td><VariedNumber value={only.value} u={only.expandedUncertainty} unit={source.unit} against={againstAt(source, only.at, null)} /></td><td /></tr>}
         {own.map((v) => (
           <tr key={v.id}>
             <th scope="row" className="font-normal!">
               <Link href={`/variations/${v.id}` as Route} className="inline-flex min-h-8 items-center">{changesInWords(v.changes)}</Link>
               {v.note && <span className="block max-w-[40ch] text-small text-ink-2 [overflow-wrap:anywhere]">{v.note}</span>}
             </th>
-            <td><Outcome variation={v} submissionId={source.submissionId} unit={source.unit} now={now} /></td>
+            <td><Outcome variation={v} source={source} now={now} /></td>
             <td>{SEEN_BY[v.visibility]}{v.revision !== source.revision && <span className="block text-small text-ink-2">of revision {v.revision}</span>}</td>
           </tr>
         ))}
@@ -66,21 +67,28 @@ function Saved({ source, own, now }: { readonly source: VariationSource; readonl
   );
 }
 
-function Outcome({ variation, submissionId, unit, now }: { readonly variation: VariationView; readonly submissionId: string; readonly unit: string; readonly now: Now }) {
+/** Read against the official number of the same place; where a sweep has one value, against the first. */
+function againstAt({ points, quantity }: VariationSource, at: Place, value: number | null) {
+  const official = points.find((p) => samePlace(p.at, at)) ?? points[0];
+  const there = official !== undefined && samePlace(official.at, at) ? official.value : null;
+  return { tolerance: toleranceInUnit(official?.tolerance ?? null, quantity.scale, value ?? there), apart: value !== null && there !== null ? value - there : null };
+}
+
+function Outcome({ variation, source, now }: { readonly variation: VariationView; readonly source: VariationSource; readonly now: Now }) {
   const { run } = variation;
   switch (run.state) {
     case 'queued':
     case 'running': {
       const told = now?.runId === run.id ? now : run;
       const words = told.doing || (run.state === 'queued' ? 'waiting for a worker' : 'under way');
-      return <><span>{words}</span><ProgressBar label={`Variation: ${changesInWords(variation.changes)}`} fraction={told.fraction} /><StopRun id={submissionId} runId={run.id} what="variation" /></>;
+      return <><span>{words}</span><ProgressBar label={`Variation: ${changesInWords(variation.changes)}`} fraction={told.fraction} /><StopRun id={source.submissionId} runId={run.id} what="variation" /></>;
     }
     case 'stopped': return run.because;
     case 'refused': return run.problems.map(formatProblem).join(' ');
     case 'measured': {
       const claim = run.result.claims.find((c) => c.id === variation.claimId);
       const stops = claim?.findings.filter((f) => f.level === 'stops-lodging').map((f) => f.text).join(' ');
-      return (claim?.points ?? []).slice(0, 6).map((p, i) => <p key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}{formatWithUncertainty(p.value, p.expandedUncertainty, unit)}{p.value === null && stops && `: ${stops}`}</p>);
+      return (claim?.points ?? []).slice(0, 6).map((p, i) => <p key={i}>{Object.keys(p.at).length > 0 && `${formatAt(p.at)}: `}<VariedNumber value={p.value} u={p.expandedUncertainty} unit={source.unit} against={againstAt(source, p.at, p.value)} />{p.value === null && stops && `: ${stops}`}</p>);
     }
   }
 }

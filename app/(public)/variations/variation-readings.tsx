@@ -33,6 +33,7 @@ export function AnotherReading({ source, fields, onFields }: PartProps) {
     const reading = source.readings.find((one) => one.id === id);
     if (reading) onFields(withReading(fields, reading));
   };
+  if (source.withoutReadings !== null) return <p className="self-center text-small text-ink-2">{source.withoutReadings}</p>;
   if (source.readings.length === 0) return null;
   return (
     <SelectField label="Read a convention otherwise" value="" onChange={(e) => choose(e.target.value)} hint="A reading is no setting: files or number are taken as the words say.">

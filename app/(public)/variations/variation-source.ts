@@ -26,8 +26,10 @@ export interface VariationSource {
   readonly points: readonly Pick<ResultPoint, 'at' | 'value' | 'expandedUncertainty' | 'tolerance'>[];
   /** Facts beside the file of the waveform that the number is of. */
   readonly binary: BinaryFacts;
-  /** How the catalogue of conventions could be read otherwise here; empty where the base run does not say. */
+  /** How the catalogue of conventions could be read otherwise here; empty where none could. */
   readonly readings: readonly SourceReading[];
+  /** Why there is none and what to do, where the base run kept none. */
+  readonly withoutReadings: string | null;
 }
 
 export interface SourceReading extends OfferedReading {
@@ -51,7 +53,7 @@ function binaryOf(claim: Loose, { waveforms }: Revision['sheet']): BinaryFacts {
 }
 
 /** Undefined where the sheet holds no such claim. */
-export function variationSource({ submissionId, revision, isDraft = false, sheet }: Revision, result: ResultClaim, readings: readonly OfferedReading[] = []): VariationSource | undefined {
+export function variationSource({ submissionId, revision, isDraft = false, sheet }: Revision, result: ResultClaim, readings: readonly OfferedReading[] = [], withoutReadings: string | null = null): VariationSource | undefined {
   const claim = sheet.claims.find((c) => c['id'] === result.id);
   const quantity = catalogueRows().find(({ id }) => id === result.quantity);
   if (!claim || !quantity) return undefined;
@@ -71,5 +73,6 @@ export function variationSource({ submissionId, revision, isDraft = false, sheet
     points: result.points.map(({ at, value, expandedUncertainty, tolerance }) => ({ at, value, expandedUncertainty, tolerance })),
     binary: binaryOf(claim, sheet),
     readings: readings.map((reading) => ({ ...reading, title: conventionById(reading.convention).title })),
+    withoutReadings,
   };
 }

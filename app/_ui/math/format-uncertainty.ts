@@ -32,25 +32,43 @@ export function printedDecimals(printed: string): number {
 
 const withUnit = (text: string, unit: string) => (unit ? `${text} ${unitText(unit)}` : text);
 
+/** What a number is read against, in its own unit: where U lies far below, it needs no more digits than this. */
+export interface ReadAgainst {
+  readonly tolerance: number | null;
+  readonly apart?: number | null;
+}
+
+const scaled = (x: number | null | undefined, scale: number): number | null => (x === null || x === undefined ? null : x * scale);
+
+/** The rule of the claim table; without a tolerance two digits of U. */
+const decimalsAgainst = ({ tolerance, apart = null }: ReadAgainst, u: number): number =>
+  tolerance === null || !(tolerance > 0) ? decimalsFor(u, 2) : decimalsForReading(tolerance, 0, u, apart);
+
+/** Where no U bounds them, digits are those that the tolerance needs. */
+const unboundedStyle = (value: number, against: ReadAgainst | undefined) =>
+  against?.tolerance ? (Math.abs(value) < 1e-3 || Math.abs(value) >= 1e7 ? { significant: Math.max(2, exponentOf(value) - exponentOf(against.tolerance) + 2) } : { decimals: decimalsForReading(against.tolerance, 0, null, against.apart ?? null), plain: true }) : {};
+
 /**
  * `36.297 ± 0.011 Mpc`; `(9.75 ± 0.20) × 10⁻⁵`; a tiny bar beside a plain value keeps its power of
- * ten: `0.91854503 ± 2.0 × 10⁻⁷`. What is not known is the word, never a zero.
+ * ten: `0.91854503 ± 2.0 × 10⁻⁷`. What is not known is the word, never a zero. Read against a tolerance, `0.99323 ± 5.8 × 10⁻¹⁰`.
  */
-export function formatWithUncertainty(value: number | null, uncertainty: number | null, unit = ''): string {
+export function formatWithUncertainty(value: number | null, uncertainty: number | null, unit = '', against?: ReadAgainst): string {
   if (value === null || !Number.isFinite(value)) return 'not computable';
-  if (uncertainty === null || !Number.isFinite(uncertainty)) return `${withUnit(formatNumber(value), unit)} ± unknown`;
-  if (uncertainty <= 0) return `${withUnit(formatNumber(value), unit)} ± 0`;
+  if (uncertainty === null || !Number.isFinite(uncertainty)) return `${withUnit(formatNumber(value, unboundedStyle(value, against)), unit)} ± unknown`;
+  if (uncertainty <= 0) return `${withUnit(formatNumber(value, unboundedStyle(value, against)), unit)} ± 0`;
   const u = roundUpUncertainty(uncertainty);
   const size = Math.max(Math.abs(value), u);
-  if (size < 1e-3 || size >= 1e7) return withUnit(sharedPower(value, u, exponentOf(size)), unit);
-  const decimals = decimalsFor(u, 2);
-  const bar = formatNumber(u, u < 1e-3 ? { significant: 2 } : { decimals });
+  if (size < 1e-3 || size >= 1e7) return withUnit(sharedPower(value, u, exponentOf(size), against), unit);
+  const decimals = against ? decimalsAgainst(against, u) : decimalsFor(u, 2);
+  const bar = formatNumber(u, u < 1e-3 || decimals < decimalsFor(u, 2) ? { significant: 2 } : { decimals });
   return withUnit(`${formatNumber(value, { decimals, plain: true })} ± ${bar}`, unit);
 }
 
-function sharedPower(value: number, u: number, power: number): string {
-  const decimals = Math.max(0, power - (exponentOf(u) - 1));
+function sharedPower(value: number, u: number, power: number, against: ReadAgainst | undefined): string {
+  const fine = Math.max(0, power - (exponentOf(u) - 1));
   const scale = 10 ** -power;
+  const decimals = Math.min(fine, decimalsAgainst({ tolerance: scaled(against?.tolerance, scale), apart: scaled(against?.apart, scale) }, u * scale));
+  if (decimals < fine) return `${formatNumber(value * scale, { decimals, plain: true })} × ${powerOfTen(power)} ± ${formatNumber(u, { significant: 2 })}`;
   const mantissa = formatNumber(value * scale, { decimals, plain: true });
   return `(${mantissa} ± ${formatNumber(u * scale, { decimals, plain: true })}) × ${powerOfTen(power)}`;
 }

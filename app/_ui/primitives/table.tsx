@@ -14,7 +14,7 @@ interface TableProps {
 export function Table({ caption, captionSeen, className, children }: TableProps) {
   return (
     <div className="overflow-x-auto" tabIndex={0} role="group" aria-label={caption}>
-      <table className={classes('tbl', className)}>
+      <table role="table" className={classes('tbl', className)}>
         <caption className={captionSeen ? 'pb-2' : 'sr-only'}>{caption}</caption>
         {children}
       </table>

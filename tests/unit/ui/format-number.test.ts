@@ -42,6 +42,16 @@ describe('a printed number', () => {
   });
 });
 
+describe('a number read against a tolerance', () => {
+  it('has no more digits than U or the tolerance warrants, and enough that a difference is seen', () => {
+    expect(formatWithUncertainty(0.99323483694, 5.8e-10, '', { tolerance: 0.00055 })).toBe('0.99323 ± 5.8 × 10⁻¹⁰');
+    expect(formatWithUncertainty(0.99323483694, 5.8e-10, '', { tolerance: 0.00055, apart: 1e-7 })).toBe('0.9932348 ± 5.8 × 10⁻¹⁰');
+    expect(formatWithUncertainty(36.2971, 0.011, 'Mpc', { tolerance: 1e-6 })).toBe('36.297 ± 0.011 Mpc');
+    expect(formatWithUncertainty(9.75123456e-5, 2e-12, '', { tolerance: 1e-6 })).toBe('9.75 × 10⁻⁵ ± 2.0 × 10⁻¹²');
+    expect(formatWithUncertainty(0.5, 0.0012, '', { tolerance: null })).toBe('0.5000 ± 0.0012');
+  });
+});
+
 describe('an uncertainty', () => {
   it('is rounded up to two digits, so that no bar is printed too short', () => {
     expect(roundUpUncertainty(0.0002)).toBe(0.0002);

@@ -51,7 +51,7 @@ export function CheckPart(props: CheckPartProps) {
         <CheckHead latest={latest} />
         {running && <ProgressList label="The check" steps={[{ label: progress?.doing || latest?.doing || 'Waiting for its turn', fraction: progress?.fraction ?? latest?.fraction ?? 0 }]} />}
         {latest && running && <StopRun key={latest.runId} id={id} runId={latest.runId} what="check" />}
-        <div><Button tone={latest?.current ? 'plain' : 'main'} busy={running ? 'Checking' : asked.busy ? 'Asking' : null} onClick={() => void runCheck()}>{latest ? 'Check again' : 'Check'}</Button></div>
+        <div><Button tone={latest?.numbers?.current && latest.numbers.later === null ? 'plain' : 'main'} busy={running ? 'Checking' : asked.busy ? 'Asking' : null} onClick={() => void runCheck()}>{latest ? 'Check again' : 'Check'}</Button></div>
         <Trouble trouble={asked.trouble} />
       </header>
       {latest && !running && <Problems {...props} latest={latest} />}
@@ -62,16 +62,19 @@ export function CheckPart(props: CheckPartProps) {
   );
 }
 
+const refusedWords = ({ problems }: CheckSummary): string => `${problems.length} to mend before anything can be computed.`;
+
 function CheckHead({ latest }: { readonly latest: CheckSummary | null }) {
   if (!latest) return <p className="text-ui text-ink-2">The server reads your files and computes each number, before anybody else sees them.</p>;
   if (isRunning(latest)) return <p className="text-ui text-ink-2" role="status">The check reads what was saved. Go on writing; it is saved when the check has ended.</p>;
-  if (latest.state === 'stopped') return <p className="text-ui text-differs" role="status">{latest.because}</p>;
-  if (latest.state === 'refused') return <p className="text-ui" role="status">{latest.problems.length} to mend before anything can be computed.</p>;
+  if (latest.numbers === null) return <p className={latest.state === 'stopped' ? 'text-ui text-differs' : 'text-ui'} role="status">{latest.state === 'refused' ? refusedWords(latest) : latest.because}</p>;
   return (
     <div role="status" className="grid gap-1">
+      {latest.state === 'refused' && <p className="text-ui">{refusedWords(latest)}</p>}
+      {latest.numbers.later && <p className="text-ui">{latest.numbers.later}</p>}
       <VerdictStrip verdicts={latest.verdicts} />
       <p className="text-ui">{countVerdicts(latest.verdicts.map((v) => v.verdict))}</p>
-      {!latest.current && <p className="text-ui text-unsettled">Of an earlier save: something has changed since.</p>}
+      {!latest.numbers.current && <p className="text-ui text-unsettled">Of an earlier save: something has changed since.</p>}
     </div>
   );
 }
@@ -96,7 +99,7 @@ function Problems({ latest, fields, onGo }: WithLatest) {
 }
 
 function Findings({ id, latest, fields, onFix }: WithLatest) {
-  if (latest.state !== 'measured') return null;
+  if (latest.numbers === null) return null;
   if (latest.findings.length === 0) return <p className="px-4 py-3 text-ui text-ink-2">The checks found nothing to say about these data.</p>;
   return (
     <div role="group" aria-label="Findings" className="px-4 [&_.edge]:sm:grid-cols-1">

@@ -1,4 +1,5 @@
 import type { ConventionNote } from '@/app/_ui/claim/convention-words';
+import { laterCheckWords } from '@/app/views/later-run';
 import { notesBeside } from '@/app/views/setting-readings';
 import type { Finding } from '@/lib/engine/contract/finding';
 import { settingText } from './claim-fields';
@@ -26,11 +27,13 @@ export interface AssumedSetting {
   readonly notes: readonly ConventionNote[];
 }
 
-/** The latest check as the panel shows it; the numbers themselves are drawn on the server. */
+/** The latest check as the panel shows it, with what was found where there are numbers; these themselves are drawn on the server. */
 export interface CheckSummary {
   readonly runId: string;
   readonly state: 'queued' | 'running' | 'stopped' | 'refused' | 'measured';
   readonly current: boolean;
+  /** Of the check whose numbers stand; null where there is none. */
+  readonly numbers: { readonly current: boolean; /** A later check has none, in a sentence. */ readonly later: string | null } | null;
   readonly fraction: number;
   readonly doing: string;
   readonly because: string | null;
@@ -47,17 +50,20 @@ const order = ['stops-lodging', 'needs-answer', 'worth-a-look', 'note'];
 export function checkSummary(check: DraftView['check'], answers: readonly FindingAnswer[]): CheckSummary | null {
   if (!check) return null;
   const { run, current } = check;
-  const claims = run.state === 'measured' ? run.result.claims : [];
+  const standing = check.before ?? check;
+  const result = standing.run.state === 'measured' ? standing.run.result : null;
+  const claims = result?.claims ?? [];
   return {
     runId: run.id,
     state: run.state,
     current,
+    numbers: result && { current: standing.current, later: laterCheckWords(check) },
     fraction: run.state === 'queued' || run.state === 'running' ? run.fraction : 1,
     doing: run.state === 'queued' || run.state === 'running' ? run.doing : '',
     because: run.state === 'stopped' ? run.because : null,
     problems: run.state === 'refused' ? run.problems : [],
     findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))).map((found) => ({ ...found, answer: answerTo(answers, found.finding) })),
-    guesses: run.state === 'measured' ? (run.result.guesses ?? []) : [],
+    guesses: result?.guesses ?? [],
     verdicts: claims.map(({ id, verdict }) => ({ id, verdict })),
     assumed: claims.flatMap((c) => c.settings.filter((s) => s.standing === 'assumed' && s.value !== null).map((s) => ({ claim: c.id, name: s.name, value: settingText(s.value), unit: s.unit ?? '', notes: notesBeside(c.quantity, s.name) }))),
   };

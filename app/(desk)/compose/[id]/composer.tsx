@@ -117,7 +117,7 @@ export function Composer(props: ComposerProps) {
           <Part id="files" title="Files"><FilesPart id={id} files={files} uploads={props.uploads} usedBy={(name) => usersOf(form, name)} onGiven={give} importing={importing} /></Part>
           <Part id="waveforms" title="Waveforms"><WaveformsPart id={id} form={form} stored={files} desk={desk} /><Trouble trouble={trouble} /></Part>
           <Part id="noise" title="Noise curves"><NoisePart form={form} files={names} desk={desk} /><div className="mt-2"><FromEarlier id={id} form={form} files={files} put={put} /></div></Part>
-          <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} verdicts={props.check?.current ? props.check.verdicts : []} /></Part>
+          <Part id="claims" title="Claims"><ClaimsPart form={form} catalogue={props.catalogue} verdicts={props.check?.numbers?.current ? props.check.verdicts : []} /></Part>
           <Part id="preview" title="First look"><PreviewPart id={id} form={form} files={files} given={given} onGiven={give} /></Part>
           <Part id="statement" title="Statement"><StatementPart form={form} /></Part>
           <Part id="people" title="People"><PeoplePart id={id} authors={props.authors} you={props.you} /></Part>

@@ -3,6 +3,7 @@ import { redirect } from 'next/navigation';
 import { askedVariation, type AskedVariation, type VariationQuery } from '@/app/(public)/variations/asked-variation';
 import { variationSlot } from '@/app/(public)/variations/variation-slot';
 import { ClaimTable, ClaimTableLegend } from '@/app/_ui/claim/claim-table';
+import { Notice } from '@/app/_ui/primitives/notice';
 import { submissionAsView } from '@/app/views/submission-as-view';
 import { loadFor, loadMember } from '@/lib/http/page-guard';
 import { listOpenUploads } from '@/lib/services/files/finish-upload';
@@ -22,18 +23,22 @@ interface PageProps {
   readonly searchParams: Promise<VariationQuery>;
 }
 
+const isUnderWay = ({ check }: DraftView): boolean => check?.run.state === 'queued' || check?.run.state === 'running';
+
 /** Claimed beside recomputed, as referees will see it. */
 function Reading({ draft, variations, asked }: { readonly draft: DraftView; readonly variations: VariationList | null; readonly asked: AskedVariation | null }) {
   const view = submissionAsView(draft);
   if (view.claims.length === 0) return null;
   // With another sheet meanwhile, the number beside would be another's.
-  const current = draft.check?.current && draft.check.run.state === 'measured' ? draft.check.run.result : null;
+  const shown = draft.check?.before ?? draft.check;
+  const current = shown?.current && shown.run.state === 'measured' ? shown.run.result : null;
   const action = variationSlot({ revision: { submissionId: draft.id, revision: draft.revision.number, isDraft: true, sheet: draft.revision.sheet }, result: current, variations, asked });
   return (
     <section aria-labelledby="reading-h" className="mt-12">
       <h2 id="reading-h" className="mb-1">What the check reads</h2>
-      <p className="mb-3 text-ui text-ink-2">{draft.check ? (draft.check.current ? 'Of what is saved now; seen by the authors alone.' : 'Of an earlier save; check again for what is saved now.') : 'Nothing has been computed yet.'}</p>
-      <ClaimTable view={view} slots={{ action, ...candidateSlots({ submissionId: draft.id, runId: draft.check?.run.id ?? null, answers: draft.candidateAnswers, mayAnswer: draft.may.answerCandidates, mayTakeOver: draft.may.edit, mayAsk: false, varyAt: variations ? `/compose/${draft.id}` : null }) }} open={asked ? [asked.claimId] : []} />
+      <p className="mb-3 text-ui text-ink-2">{shown ? (shown.current ? 'Of what is saved now; seen by the authors alone.' : 'Of an earlier save; check again for what is saved now.') : 'Nothing has been computed yet.'}</p>
+      {view.laterRun && <div className="mb-3"><Notice kind="look" word="A check before"><p>{view.laterRun} {isUnderWay(draft) ? '' : <a href="#check" className="inline-flex min-h-8 items-center">Check again</a>}</p></Notice></div>}
+      <ClaimTable view={view} slots={{ action, ...candidateSlots({ submissionId: draft.id, runId: shown?.run.id ?? null, answers: draft.candidateAnswers, mayAnswer: draft.may.answerCandidates, mayTakeOver: draft.may.edit, mayAsk: false, varyAt: variations ? `/compose/${draft.id}` : null }) }} open={asked ? [asked.claimId] : []} />
       <ClaimTableLegend />
     </section>
   );

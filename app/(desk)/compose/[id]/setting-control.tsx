@@ -16,6 +16,8 @@ function rangeOf({ shape, unit }: SettingRow): string {
 
 interface SettingControlProps {
   readonly row: SettingRow;
+  /** In words; the name of the contract then stands after it. */
+  readonly title?: string;
   /** What holds where nothing is entered. */
   readonly undeclared: string;
   readonly name: string;
@@ -26,8 +28,8 @@ interface SettingControlProps {
 }
 
 /** One setting of a claim, in the box that its shape asks for; the composer and a variation draw it alike. */
-export function SettingControl({ row, undeclared, ...field }: SettingControlProps) {
-  const label = <><span className="font-semibold">{row.name}</span>{row.unit && <span className="font-normal text-ink-2">, {row.unit}</span>}</>;
+export function SettingControl({ row, title, undeclared, ...field }: SettingControlProps) {
+  const label = <><span className="font-semibold">{title ?? row.name}</span>{title && <> <code className="font-code text-code font-normal text-ink-2">{row.name}</code></>}{row.unit && <span className="font-normal text-ink-2">, {row.unit}</span>}</>;
   if (row.shape.kind === 'choice')
     return <SelectField label={label} hint={row.meaning} {...field}><option value="">{undeclared}</option>{row.shape.options.map((o) => <option key={String(o)}>{String(o)}</option>)}</SelectField>;
   return <TextField label={label} placeholder={undeclared} hint={[row.meaning, rangeOf(row)].filter(Boolean).join(' ')} spellCheck={false} {...field} />;

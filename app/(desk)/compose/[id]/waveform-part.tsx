@@ -22,13 +22,15 @@ interface Choice {
   readonly label: string;
   readonly assumed: string;
   readonly options: readonly string[];
+  /** What an option means, where its word of the format does not say it. */
+  readonly words?: Readonly<Record<string, string>>;
 }
 const choices: readonly Choice[] = [
   { field: 'domain', label: 'Domain', assumed: 'time', options: ['time', 'frequency'] },
   { field: 'variable', label: 'Variable', assumed: 'strain', options: ['strain', 'news', 'psi4', 'phi2', 'luminosity'] },
   { field: 'timeUnit', label: 'Unit of the first column', assumed: 'M', options: ['M', 's', '1/M', 'Hz'] },
   { field: 'amplitudeUnit', label: 'Amplitude', assumed: 'rh/M; geometric for φ₂', options: ['rh/M', 'strain', 'geometric', 'perField'] },
-  { field: 'polarisation', label: 'Sign of cross', assumed: 'plus-minus-i-cross', options: ['plus-minus-i-cross', 'plus-plus-i-cross'] },
+  { field: 'polarisation', label: 'Sign of cross', assumed: 'h₊ − i h×, plus-minus-i-cross', options: ['plus-minus-i-cross', 'plus-plus-i-cross'], words: { 'plus-minus-i-cross': 'h₊ − i h×, plus-minus-i-cross', 'plus-plus-i-cross': 'h₊ + i h×, plus-plus-i-cross' } },
   { field: 'negativeM', label: 'Modes with m < 0', assumed: 'given if any is in the file, else mirror', options: ['mirror', 'given', 'none'] },
 ];
 
@@ -118,7 +120,7 @@ function WaveformRow({ id, form, index, stored, desk, onRemove }: WaveformsPartP
         {choices.map((c) => (
           <SelectField key={c.field} label={c.label} {...register(`${at}.${c.field}`)}>
             <option value="">assumed: {c.assumed}</option>
-            {c.options.map((o) => <option key={o}>{o}</option>)}
+            {c.options.map((o) => <option key={o} value={o}>{c.words?.[o] ?? o}</option>)}
           </SelectField>
         ))}
       </div>

@@ -100,6 +100,12 @@ function NextStep({ you, draft, desk }: Pick<Loaded, 'you' | 'draft' | 'desk'>) 
   );
 }
 
+/** Of this revision, whichever engine it is asked of. */
+function isUnderWay({ run, laterRun }: Loaded['lodged']): boolean {
+  const state = (laterRun ?? run)?.state;
+  return state === 'queued' || state === 'running';
+}
+
 export default async function Submission({ params, searchParams }: PageProps) {
   const { id } = await params;
   const { revision, ...query } = await searchParams;
@@ -111,7 +117,7 @@ export default async function Submission({ params, searchParams }: PageProps) {
   const withThreads = desk.threads.filter((t) => t.state === 'open' || t.state === 'answered').map((t) => t.anchor.claim);
   return (
     <>
-      <FollowRun id={id} running={lodged.run?.state === 'queued' || lodged.run?.state === 'running'} />
+      <FollowRun id={id} running={isUnderWay(lodged)} />
       <RecordPage view={submissionAsView(lodged, { reports: desk.reports.map(reportAsView) })} slots={slotsFor(all, asked)} trail={{ href: '/submissions', label: 'Submissions' }} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
       <Letters decisions={desk.decisions} />
     </>
