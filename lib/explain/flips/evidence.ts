@@ -21,10 +21,18 @@ interface Passage {
 /** Letters on either side of the words found. */
 const AROUND = 40;
 
+/** So many letters on either side, less the words that they cut. */
+function wholeWords(text: string, from: number, length: number, around: number): readonly [start: number, end: number] {
+  const [start, end] = [Math.max(0, from - around), Math.min(text.length, from + length + around)];
+  const [before, after] = [text.slice(start, from), text.slice(from + length, end)];
+  const [first, last] = [start > 0 ? before.search(/\s/) : 0, end < text.length ? after.search(/\s\S*$/) : after.length];
+  return [first < 0 ? from - before.length : start + first, last < 0 ? end : from + length + last];
+}
+
 /** The words found with a little of what stands around them, on one line. */
 function quoted({ where, text, saysWhose }: Written, from: number, length: number): string {
   const around = saysWhose === true ? 0 : AROUND;
-  const [start, end] = [Math.max(0, from - around), Math.min(text.length, from + length + around)];
+  const [start, end] = wholeWords(text, from, length, around);
   // A formula cut in the middle is no words.
   const words = text.slice(start, end).replace(/\${1,2}[^$]*(?:\${1,2}|$)/g, '…').replace(/\s+/g, ' ').trim();
   const passage = `${start > 0 ? '…' : ''}${words}${end < text.length ? '…' : ''}`;

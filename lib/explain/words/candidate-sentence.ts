@@ -62,8 +62,10 @@ function othersPart({ explains, breaks }: Facts): string {
   return [agree, lose].filter((part) => part !== '').join(' ');
 }
 
-function chancePart({ readings, tried, chance, standing }: Facts): string {
+function chancePart({ readings, tried, chance, standing, changes }: Facts): string {
   const one = readings.length === 1 ? 'One reading' : `${capital(countWord(readings.length))} readings`;
   const often = `a fit as good would arise by chance in ${percentage(chance)} of claims`;
-  return `${one} of ${tried} tried; ${often}${standing === 'coincidence' ? ', and this one may be a coincidence' : ''}.`;
+  // The search as a whole tried more than a single change is judged among.
+  const among = changes === 1 ? `${tried} single ones tried` : `${tried} tried, single ones and pairs`;
+  return `${one} of ${among}; ${often}${standing === 'coincidence' ? ', and this one may be a coincidence' : ''}.`;
 }

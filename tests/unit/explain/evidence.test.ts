@@ -10,3 +10,8 @@ it('words that tell are quoted with what stands around them', () => {
 it('of a line that says whose it is only the words that tell are quoted', () => {
   expect(evidenceIn([{ ...line, saysWhose: true }], { supports: [/one-sided/] })).toMatchObject({ evidence: 'supports', evidenceFrom: 'psd.txt: “…one-sided…”' });
 });
+
+it('no word is cut where the quotation begins or ends', () => {
+  const text = `${'a second-generation '.repeat(4)}one-sided ${'spectrum throughout '.repeat(4)}`;
+  expect(evidenceIn([{ ...line, text }], { supports: [/one-sided/] }).evidenceFrom).toBe('psd.txt: “…second-generation a second-generation one-sided spectrum throughout spectrum…”');
+});

@@ -12,7 +12,7 @@ const facts = { id: 'x', settings: {}, values: [0.97531], chance: 0.03, tried: 3
 describe('a candidate in words', () => {
   it('says what we obtain, what would give the claimed number, how many were tried and how often chance does as well', () => {
     expect(candidateSentence(match, facts)).toBe(
-      'With the stated settings we obtain 0.91850 ± 0.00090. The claimed 0.9753 is obtained if the lower cut-off is 30 Hz instead of 20 Hz: 0.97531 ± 0.00090. One reading of 31 tried; a fit as good would arise by chance in 3 % of claims. This is a suggestion for the author, not a finding.',
+      'With the stated settings we obtain 0.91850 ± 0.00090. The claimed 0.9753 is obtained if the lower cut-off is 30 Hz instead of 20 Hz: 0.97531 ± 0.00090. One reading of 31 single ones tried; a fit as good would arise by chance in 3 % of claims. This is a suggestion for the author, not a finding.',
     );
   });
 
@@ -26,7 +26,7 @@ describe('a candidate in words', () => {
   it('of a class says that the number cannot tell, and lists no more than three', () => {
     const sentence = candidateSentence(match, { ...facts, readings: ['a', 'b', 'c', 'd', 'e'].map((x) => reading(`${x} holds`)) });
     expect(sentence).toContain('if a holds, b holds, c holds or by two other readings:');
-    expect(sentence).toContain('The number alone cannot tell which. Five readings of 31 tried;');
+    expect(sentence).toContain('The number alone cannot tell which. Five readings of 31 single ones tried;');
     expect(candidateSentence(match, { ...facts, readings: [reading('a holds'), reading('b holds')] })).toContain('if a holds or if b holds:');
   });
 
