@@ -11,7 +11,7 @@ import { reachFor } from '@/lib/engine/routes/a/template-frame';
 import { scanTemplates, slicer, sourceOf } from '@/lib/engine/routes/a/template-scan';
 import { curve } from '../support/detector-claims';
 import { seededRandom } from '../support/seeded-random';
-import { drawnBy, requestOf, rescale, tableCurve, threeModes } from '../support/template-banks';
+import { burstAt, drawnBy, requestOf, rescale, tableCurve, threeModes } from '../support/template-banks';
 
 type RealRequest = TemplateRequest & { readonly response: 'plus' };
 
@@ -96,6 +96,15 @@ describe('the bounds of the search over many templates', () => {
     });
     expect(looks).toBeLessThan(0.4 * templates.length * factors.length);
     expect(bestPlaces([a], request, { store: new SpectrumStore(), numerics: houseNumerics })[0]!.index).toBe(1);
+  });
+
+  it.each([[200, 1800], [1800, 200], [1000, 1000]])('find what meets at any lag, a burst at %d and one at %d', (here, there) => {
+    const [found] = bestPlaces([burstAt(here)], requestOf([burstAt(there)], 20, [0.9, 1.1]), { store: new SpectrumStore(), numerics: houseNumerics });
+    expect(found!.massFactor).toAgreeWith(1, 2e-5);
+    const { boundsAt } = bench(burstAt(here), requestOf([burstAt(there)], 20, [0.9, 1.1]));
+    expect(boundsAt(0, 1).most).toBeGreaterThan(0.99);
+    // What two lags add up to is no lower bound, and sends the search to bins that tell them apart.
+    expect(boundsAt(0, 0.98)).toMatchObject(here === there ? { least: expect.closeTo(0.98, 1) } : { byFarLags: true });
   });
 
   it('look everywhere where bounds are not finite', () => {

@@ -26,6 +26,15 @@ export function threeModes(stretch: number): Side {
   const c = conditionWaveform(inMasses('swelling', times.map((t) => stretch * t), [mode(2, 2, 1), mode(2, 1, 0.1), mode(3, 3, 0.15)], { negativeM: 'mirror' }), 'all');
   return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: 100 * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
 }
+/** A swept burst somewhere in a long record: two of them may meet at a far lag. */
+export function burstAt(place: number): Side {
+  const times = Float64Array.from({ length: 2001 }, (_, t) => t);
+  const size = (t: number): number => Math.exp(-(((t - place) / 60) ** 2));
+  const phase = (t: number): number => 0.2 * t + 2e-4 * (t - place) ** 2;
+  const mode = { l: 2, m: 2, re: times.map((t) => size(t) * Math.cos(phase(t))), im: times.map((t) => -size(t) * Math.sin(phase(t))) };
+  const c = conditionWaveform(inMasses('burst', times, [mode], { negativeM: 'mirror' }), 'all');
+  return { waveform: c.used(null), taper: c.taper('auto', null).window, secondsPerUnit: 100 * MSUN_S, strainPerUnit: 1, inclinationRad: 0, azimuthRad: 0 };
+}
 export const rescale = (side: Side, factor: number): Side => ({ ...side, secondsPerUnit: side.secondsPerUnit * factor });
 export const requestOf = (templates: readonly Side[], fLowHz: number, range: readonly [number, number], noise: NoiseCurve = curve('G2')): TemplateRequest & { readonly response: 'plus' } => ({
   templates,
