@@ -38,7 +38,8 @@ export interface ReadAgainst {
   readonly apart?: number | null;
 }
 
-const scaled = (x: number | null | undefined, scale: number): number | null => (x === null || x === undefined ? null : x * scale);
+/** Without the last bit of the product, which could make a tolerance of 0.1 one of two digits less. */
+const scaled = (x: number | null | undefined, scale: number): number | null => (x === null || x === undefined ? null : Number((x * scale).toPrecision(12)));
 
 /** The rule of the claim table; without a tolerance two digits of U. */
 const decimalsAgainst = ({ tolerance, apart = null }: ReadAgainst, u: number): number =>
