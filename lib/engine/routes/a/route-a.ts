@@ -64,8 +64,25 @@ function turnAt(request: MatchRequest, at: MatchOutcome): number {
   return request.maximise.includes('phase') ? -at.phaseShiftRad : 2 * (at.polarisationRad ?? 0);
 }
 
+/** A mass beside directions of b: hundreds of directions at every mass are read off tables of products of modes. */
+const isTabled = (request: MatchRequest): boolean => {
+  const { mass, azimuth, inclination } = searchedIn(request);
+  return request.response === 'complex' && mass && (azimuth || inclination) && request.a.inclinationRad === request.b.inclinationRad;
+};
+
+/** The mass from the tables; shift, turn and directions from a search at that mass. Null where the tables see nothing. */
+function tabledOutcome(request: MatchRequest, store: SpectrumStore, numerics: Numerics): MatchOutcome | null {
+  const { a, b, band, maximise, rescale } = request;
+  const sights = massSights({ a, b, band, maximise, inclinationRad: a.inclinationRad }, request, store, numerics);
+  const { match, massFactor, onBound } = sights.best(a);
+  if (massFactor === undefined || !Number.isFinite(match)) return null;
+  const held = { ...request, b: rescale(b, massFactor), maximise: maximise.filter((what) => what !== 'templateMass') };
+  return { ...searchedOutcome(held, null, store, numerics), massFactor, onBound: onBound ?? false };
+}
+
 /** A template whose mass alone is searched for is a bank of one. */
 function outcomeOf(request: MatchRequest, store: SpectrumStore, numerics: Numerics): MatchOutcome {
+  if (isTabled(request)) return tabledOutcome(request, store, numerics) ?? searchedOutcome(request, null, store, numerics);
   const { a, b, ...shared } = request;
   const bank = { ...shared, templates: [b] };
   if (!request.maximise.includes('templateMass') || !isScannable([a], bank)) return searchedOutcome(request, null, store, numerics);
@@ -74,7 +91,7 @@ function outcomeOf(request: MatchRequest, store: SpectrumStore, numerics: Numeri
 
 function bestTemplates(signals: readonly Side[], request: TemplateRequest, store: SpectrumStore, numerics: Numerics): BestTemplate[] {
   const searches = request.templates.length > 1 || request.maximise.includes('templateMass');
-  if (!searches || !isScannable(signals, request)) return bestByPairs(signals, request, (pair) => searchedOutcome(pair, null, store, numerics));
+  if (!searches || !isScannable(signals, request)) return bestByPairs(signals, request, (pair) => (isTabled(pair) ? outcomeOf(pair, store, numerics) : searchedOutcome(pair, null, store, numerics)));
   return bestPlaces(signals, request, { store, numerics }).map(({ index, massFactor }, s) => ({
     index,
     outcome: searchedOutcome(pairRequest(request, signals[s]!, index), massFactor, store, numerics),

@@ -1,4 +1,4 @@
-import type { Band, DetectorRoute, ResponseGram, Side } from '../../contract/route';
+import type { Band, DetectorRoute, MatchOutcome, MatchRequest, ResponseGram, Side } from '../../contract/route';
 import type { Response } from '../../contract/settings';
 import { channelsOf, normSquared } from './channels';
 import { DEFAULT_GOAL, frequencyNodes } from './frequency-panels';
@@ -6,6 +6,7 @@ import { frequencySource } from './frequency-source';
 import { alignedResidual, bestMatch, climbMass, looksAt } from './best-match';
 import { massSights } from './mass-sights';
 import { modeGram, type Sight } from './mode-gram';
+import { freedomOf } from './moving-side';
 import { nodesFor } from './shared-nodes';
 import { sightMatcher } from './sight-matcher';
 import type { RouteBKnobs, Source } from './spectrum';
@@ -57,6 +58,18 @@ function modePower(side: Side, band: Band, knobs: RouteBKnobs): number {
   return source.modes(nodes.f).reduce((sum, { spectrum }) => sum + normSquared(channelsOf(spectrum, 'complex'), nodes.weight), 0);
 }
 
+/** The joint search; a mass beside directions of b comes from power series of pairs of modes, the rest from a search at that mass. */
+function joint(request: MatchRequest, source: (side: Side) => Source, knobs: RouteBKnobs): MatchOutcome {
+  const { mass, azimuth, inclination } = freedomOf(request);
+  const { a, b, band, maximise, rescale } = request;
+  const tabled = request.response === 'complex' && mass && (azimuth || inclination) && a.inclinationRad === b.inclinationRad;
+  if (!tabled) return bestMatch(request, source, knobs);
+  const { match, massFactor, onBound } = massSights({ a, b, band, maximise, inclinationRad: a.inclinationRad }, request, source, knobs).best(a);
+  if (massFactor === undefined || !Number.isFinite(match)) return bestMatch(request, source, knobs);
+  const held = { ...request, b: rescale(b, massFactor), maximise: maximise.filter((what) => what !== 'templateMass') };
+  return { ...bestMatch(held, source, knobs), massFactor, onBound: onBound ?? false };
+}
+
 /**
  * Route B: direct Fourier quadrature and residual minimisation.
  * Shape:  see DetectorRoute.
@@ -75,7 +88,7 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
   const pairs: PairSearch = {
     look: (pair, factors) => looksAt(pair, factors, source, knobs),
     climb: (pair, low, high) => climbMass(pair, low, high, source, knobs),
-    whole: (pair) => bestMatch(pair, source, knobs),
+    whole: (pair) => joint(pair, source, knobs),
   };
   return {
     name: 'B',
@@ -85,7 +98,7 @@ export function routeBWith(changes: Partial<RouteBKnobs>): DetectorRoute {
     powerOf: (amplitude, band) => closedFormPower(amplitude, band, knobs.quadrature),
     modePower: (side, band) => modePower(side, band, knobs),
     overlap,
-    match: (request) => bestMatch(request, source, knobs),
+    match: (request) => joint(request, source, knobs),
     bestTemplates: (signals, request) => bestTemplatesByClimbing(signals, request, pairs),
     residualPower: (request, at) => alignedResidual(request, at, source, knobs),
   };
