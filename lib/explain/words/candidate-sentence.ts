@@ -24,11 +24,13 @@ function declaredPart({ points, unit }: JudgedClaim, i: number): string {
   return `With the stated settings we obtain ${measuredNumber(value, expandedUncertainty, unit)}${points.length > 1 ? atPlace(at) : ''}.`;
 }
 
-function obtainedPart({ points, unit }: JudgedClaim, i: number, { readings, values }: Facts): string {
-  const { claimed, halfDigit, expandedUncertainty } = points[i]!;
+function obtainedPart({ points, unit, law }: JudgedClaim, i: number, { readings, values }: Facts): string {
+  const { claimed, halfDigit, expandedUncertainty, value: declared } = points[i]!;
   const value = values[i] ?? null;
+  // What a factor makes of a number it makes of its error bar.
+  const width = value === null || law !== 'size' || declared === 0 ? expandedUncertainty : expandedUncertainty * Math.abs(value / declared);
   const all = points.length === 1 ? 'is obtained' : points.length === 2 ? 'is obtained, and the other number too,' : `is obtained, and the other ${countWord(points.length - 1)} numbers too,`;
-  return `The claimed ${claimedNumber(claimed, halfDigit, unit)} ${all} if ${conditions(readings)}${value === null ? '' : `: ${measuredNumber(value, expandedUncertainty, unit)}`}.`;
+  return `The claimed ${claimedNumber(claimed, halfDigit, unit)} ${all} if ${conditions(readings)}${value === null ? '' : `: ${measuredNumber(value, width, unit)}`}.`;
 }
 
 const MOST_READINGS = 3;

@@ -35,6 +35,11 @@ describe('a candidate in words', () => {
     expect(sentence).toContain('For it speaks noise.txt: “f  ASD”. Against it speaks statement: “one-sided”.');
   });
 
+  it('give a number that a factor makes the error bar that the factor makes', () => {
+    const loud = { ...match, law: 'size' as const, points: [{ ...match.points[0]!, value: 100, claimed: 50, halfDigit: 0.5, expandedUncertainty: 0.4 }] };
+    expect(candidateSentence(loud, { ...facts, values: [50], readings: [reading('a holds')] })).toContain('100.00 ± 0.40. The claimed 50 is obtained if a holds: 50.00 ± 0.20.');
+  });
+
   it('say of the data in a sentence of their own what they show, and end it once', () => {
     const sentence = candidateSentence(match, { ...facts, readings: [reading('a holds', { evidence: 'supports', evidenceFrom: 'S holds half of the power of G2.' }), reading('b holds', { evidence: 'supports', evidenceFrom: 'noise.txt: “two-sided”' })] });
     expect(sentence).toContain('The data speak for it: S holds half of the power of G2. For it speaks noise.txt: “two-sided”. ');
