@@ -75,6 +75,9 @@ export function formatByEnding(file: string): 'text' | 'npy' | 'npz' | 'hdf5' {
   return ending === 'h5' || ending === 'hdf5' || ending === 'hdf' ? 'hdf5' : 'text';
 }
 
+/** Strain in rh/M against seconds: the file's own mass turns its times into M. */
+const stretchedByMass = ({ timeUnit, variable = 'strain', totalMassMsun }: RawWaveform): boolean => timeUnit === 's' && variable === 'strain' && totalMassMsun !== undefined;
+
 function unitProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
   const problems: Problem[] = [];
   const domain = raw.domain ?? 'time';
@@ -88,9 +91,13 @@ function unitProblems(raw: RawWaveform, path: readonly string[]): Problem[] {
   if (raw.variable === 'phi2') return [...problems, ...phi2Problems(raw, path)];
   const amplitude = raw.amplitudeUnit ?? 'rh/M';
   if (amplitude === 'geometric' || amplitude === 'perField') problems.push(refused(pointer(...path, 'amplitudeUnit'), amplitude, '"rh/M" or "strain"', 'These units are for φ₂.'));
-  else if (physicalTime !== (amplitude === 'strain'))
-    problems.push(refused(pointer(...path, 'amplitudeUnit'), raw.amplitudeUnit ?? '"rh/M", the house default', physicalTime ? `"strain" with times in "${raw.timeUnit}"` : '"rh/M" with times in M', 'Either both axis and amplitude are physical (s and strain) or both are in units of M.'));
-  if (physicalTime && raw.variable !== undefined && raw.variable !== 'strain') problems.push(refused(pointer(...path, 'variable'), raw.variable, '"strain" for physical units'));
+  else if (physicalTime !== (amplitude === 'strain') && !stretchedByMass(raw))
+    problems.push(
+      refused(
+        pointer(...path, 'amplitudeUnit'), raw.amplitudeUnit ?? '"rh/M", the house default', physicalTime ? `"strain" with times in "${raw.timeUnit}"` : '"rh/M" with times in M',
+        'Either both axis and amplitude are physical (s and strain; news in 1/s, ψ₄ in 1/s²) or both are in units of M. Strain modes in rh/M against seconds are read where totalMassMsun beside them says how long an M is.',
+      ),
+    );
   return problems;
 }
 

@@ -60,7 +60,8 @@ export interface DetectorPoint {
 /** Stands in where a distance cancels. */
 export const ANY_DISTANCE_MPC = 1000;
 
-export const canRescale = (w: Waveform): boolean => w.unit === 'M' || (w.ownTotalMassMsun !== null && w.ownDistanceMpc !== null);
+/** A strain in rh/M against seconds has its own mass and needs no distance. */
+export const canRescale = (w: Waveform): boolean => w.unit === 'M' || (w.ownTotalMassMsun !== null && (w.ownDistanceMpc !== null || w.amplitudeUnit === 'rh/M'));
 
 const carriesMass = (w: Waveform): boolean => w.unit === 'M' || w.amplitudeUnit !== 'strain' || w.ownTotalMassMsun !== null;
 
