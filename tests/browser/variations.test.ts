@@ -1,5 +1,4 @@
 import { generateKeyPairSync } from 'node:crypto';
-import AxeBuilder from '@axe-core/playwright';
 import type { Browser, BrowserContext, Locator, Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest';
 import { openDatabase } from '@/db/client';
@@ -9,6 +8,7 @@ import { keyIdOf, signRecord } from '@/lib/badges/signature';
 import type { ResultDocument } from '@/lib/pipeline/result';
 import { createAccount } from '@/lib/services/accounts/create-account';
 import type { SubmissionView } from '@/lib/services/submissions/submission-view';
+import { accessibilityFaults } from '../support/accessibility';
 import { startApplication, type TestApplication } from '../support/application';
 import { launchBrowser } from '../support/browser';
 import { burstFiles, burstSheet } from '../support/burst-sheet';
@@ -77,7 +77,6 @@ afterAll(async () => {
 const form = (on: Page, claim: string): Locator => on.getByRole('form', { name: `Variation of ${claim}` });
 const rowOf = (on: Page, claim: string, words: RegExp): Locator => on.getByRole('table', { name: `Your variations of ${claim}` }).getByRole('row', { name: words });
 const compute = (on: Page, claim: string): Promise<void> => form(on, claim).getByRole('button', { name: 'Compute the variation' }).click();
-const axeOf = async (on: Page, within = 'body') => (await new AxeBuilder({ page: on }).include(within).analyze()).violations.map(({ id: rule, nodes }) => `${rule}: ${nodes.map((n) => n.target.join(' ')).join(' | ')}`);
 const isWider = (on: Page) => on.evaluate(() => document.documentElement.scrollWidth > window.innerWidth);
 
 /** Nothing wider than the window and nothing that axe names, in three widths and both themes. */
@@ -86,7 +85,7 @@ async function expectWhole(on: Page, within?: string): Promise<void> {
     await on.setViewportSize({ width, height: 900 });
     await on.emulateMedia({ colorScheme });
     expect(await isWider(on), `${width}`).toBe(false);
-    expect(await axeOf(on, within), `${width} ${colorScheme}`).toEqual([]);
+    expect(await accessibilityFaults(on, within), `${width} ${colorScheme}`).toEqual([]);
   }
   await on.setViewportSize({ width: 1440, height: 900 });
   await on.emulateMedia({ colorScheme: 'light' });
@@ -236,7 +235,7 @@ describe('a reader, on a record', { timeout: 300_000 }, () => {
     await page.goto(address);
     await page.getByText('Those of today are used up').first().waitFor();
     expect(await form(page, 'C1').count()).toBe(0);
-    expect(await axeOf(page)).toEqual([]);
+    expect(await accessibilityFaults(page)).toEqual([]);
   });
 
   it('leaves nothing on the console', () => {
