@@ -95,8 +95,10 @@ describe('a worker with two cores', () => {
     await seed(1, 'seed 4');
     await ask(2, 'mine');
     await open();
-    await until(() => held.length === 2, 'two runs');
-    expect(titles()).toEqual(['mine', 'seed 1']);
+    await until(() => titles().includes('mine') && titles().includes('seed 1'), 'two runs');
+    // Three questions may reach the queue at once: then a second seed has begun as well, and stands aside.
+    expect(titles().filter((title) => !['mine', 'seed 1', 'seed 2'].includes(title))).toEqual([]);
+    expect(of('mine').aside).toBe(false);
     of('mine').finish();
     await until(async () => (await finished()).length === 1, 'a result');
     expect(await finished()).toEqual(['mine']);
