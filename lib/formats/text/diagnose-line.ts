@@ -79,6 +79,13 @@ const fieldsOf = (text: string): string[] => {
   return /[,;]/.test(body) ? body.split(/[,;]/).map((field) => field.trim()) : body.split(/\s+/);
 };
 
+/** Words where the first numbers should stand: a heading whose names are not the sheet's. */
+const otherHeading = (text: string, r: RefusedLine): Cause | null => {
+  const fields = fieldsOf(text);
+  if (r.separator !== null || fields.length !== r.names.length || fields.some((field) => !/^["']?[a-z_]/i.test(field))) return null;
+  return { code: 'formats/not-a-number', saw: `a line of names, ${quote(fields.join(' '))}`, expected: `numbers, or the names that the sheet gives (${r.names.slice(0, 8).join(', ')}${r.names.length > 8 ? ', …' : ''})`, hint: 'See that the columns are in the order of "columns", then begin the line with "#" or remove it.' };
+};
+
 const emptyField = (text: string, r: RefusedLine): Cause | null => {
   const at = fieldsOf(text).indexOf('');
   if (at < 0) return null;
@@ -98,4 +105,4 @@ const malformed = (text: string, r: RefusedLine): Cause => {
   return { code: 'formats/not-a-number', saw: `${quote(field)}${at >= 0 && r.names[at] ? ` in column ${r.names[at]}` : ''}`, expected: 'a decimal number such as -1.25e-21' };
 };
 
-const causes = [binary, typographicMinus, hexadecimal, stars, lostExponent, decimalComma, mixedSeparators, emptyField, ragged];
+const causes = [binary, typographicMinus, hexadecimal, stars, lostExponent, decimalComma, mixedSeparators, otherHeading, emptyField, ragged];

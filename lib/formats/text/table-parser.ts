@@ -232,7 +232,7 @@ export class TableParser {
 
   /** A first line of names is let through when it says what the sheet says. */
   private isHeader(text: string): boolean {
-    const words = text.split(/[\s,;]+/);
+    const words = text.split(/[\s,;]+/).map((word) => word.replace(/^(["'])(.*)\1$/, '$2'));
     return words.length === this.names.length && this.names.every((name, k) => name === '_' || name === words[k]);
   }
 

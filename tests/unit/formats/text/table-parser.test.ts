@@ -34,6 +34,7 @@ describe('a text table is read', () => {
     ['a byte order mark', '\ufeff0 1 2\n1 3 4\n'],
     ['a first line of the declared names', 't re im\n0 1 2\n1 3 4\n'],
     ['a first line of names between commas', 't, re, im\n0,1,2\n1,3,4\n'],
+    ['a first line of names between quotes', '"t","re","im"\n0,1,2\n1,3,4\n'],
     ['Fortran exponents', '0.0D0 1.0d0 2D+00\n1 3 0.4D1\n'],
   ])('with %s', (_, text) => {
     expect(columns(text)).toEqual([[0, 1], [1, 3], [2, 4]]);
@@ -92,7 +93,7 @@ describe('a text table is refused with file, line, what was seen and what to do'
     ['a change of separator', '0 1 2\n1,3,4\n', 'a.txt:2: saw columns parted by blanks and commas in "1,3,4"; expected one separator throughout the file (here blanks).'],
     ['a word', '0 1 2\n1 about3 4\n', 'a.txt:2: saw "about3" in column re; expected a decimal number such as -1.25e-21.'],
     ['a quoted number', '0 "1" 2\n', 'a.txt:1: saw "\\"1\\"" in column re'],
-    ['names other than the declared ones', 't re22 im22\n0 1 2\n', 'a.txt:1: saw "t" in column t'],
+    ['names other than the declared ones', 't re22 im22\n0 1 2\n', 'a.txt:1: saw a line of names, "t re22 im22"; expected numbers, or the names that the sheet gives (t, re, im). See that the columns are in the order of "columns", then begin the line with "#" or remove it.'],
     ['a lone carriage return', '0 1 2\r1 3 4\r', 'a.txt:1: saw'],
     ['zero bytes', '0 1 \u00002\n', 'a.txt:1: saw bytes that are not text'],
   ])('for %s', (_, text, sentence) => {
