@@ -1,5 +1,5 @@
 import { samePlace, type Place } from '@/lib/kernel/place';
-import type { ResultDocument, ResultPoint } from '@/lib/pipeline/result';
+import type { ResultClaim, ResultDocument, ResultPoint } from '@/lib/pipeline/result';
 
 /** The number a thread hangs on: a claim, and one point of it where the claim is a sweep. */
 export interface Anchor {
@@ -12,6 +12,9 @@ export interface Anchor {
 export interface AnchoredNumber {
   readonly printed: string | null;
   readonly value: number | null;
+  /** Not kept with threads of earlier versions. */
+  readonly expandedUncertainty?: number | null;
+  readonly unit?: string;
 }
 
 export type ReAnchoring =
@@ -19,7 +22,7 @@ export type ReAnchoring =
   | { readonly standing: 'changed'; readonly was: AnchoredNumber; readonly now: AnchoredNumber }
   | { readonly standing: 'lost'; readonly was: AnchoredNumber };
 
-const numberOf = (point: ResultPoint): AnchoredNumber => ({ printed: point.printed, value: point.value });
+export const anchoredNumber = ({ unit }: Pick<ResultClaim, 'unit'>, { printed, value, expandedUncertainty }: ResultPoint): AnchoredNumber => ({ printed, value, expandedUncertainty, unit });
 
 /**
  * The number under an anchor, or undefined when the result has no such place. A claim of one
@@ -31,10 +34,10 @@ export function findAnchoredNumber(result: ResultDocument, anchor: Anchor): Anch
   const { at } = anchor;
   if (at !== null && Object.keys(at).length > 0) {
     const point = claim.points.find((p) => samePlace(p.at, at));
-    return point ? numberOf(point) : undefined;
+    return point ? anchoredNumber(claim, point) : undefined;
   }
   const only = claim.points.length === 1 ? claim.points[0] : undefined;
-  return only ? numberOf(only) : { printed: null, value: null };
+  return only ? anchoredNumber(claim, only) : { printed: null, value: null };
 }
 
 /** Where a thread stands in a newer result. Lost anchors are listed, never dropped. */

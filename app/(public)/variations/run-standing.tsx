@@ -9,6 +9,7 @@ import { OfflineStrap } from '@/app/_ui/primitives/offline-strap';
 import { ProgressBar } from '@/app/_ui/primitives/progress';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { VariedRun } from '@/lib/services/variations/variation-view';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 
 interface StandingProps {
   readonly submissionId: string;
@@ -24,7 +25,7 @@ const capital = (words: string): string => words.charAt(0).toUpperCase() + words
 export function RunStanding({ submissionId, runId, run, follow }: StandingProps) {
   const router = useRouter();
   const look = useCallback(() => router.refresh(), [router]);
-  const live = run.state === 'queued' || run.state === 'running';
+  const live = isUnderWay(run);
   const now = useProgress(submissionId, live && follow, look);
   if (run.state === 'stopped') return <Notice kind="stop" word="Stopped"><p>{run.because}</p></Notice>;
   if (run.state === 'refused') return <Notice kind="stop" word="Refused">{run.problems.map((problem) => <p key={problem.where}>{formatProblem(problem)}</p>)}</Notice>;

@@ -16,11 +16,14 @@ const noiseFrom = (noise: string): Pick<AskedChanges, 'noise'> => (noise === '' 
 const end = (typed: string): number => (typed.trim() === '' ? Number.NaN : Number(typed));
 const maskFrom = ({ from, to }: VariationFields['mask']): Pick<AskedChanges, 'mask'> => (from.trim() === '' && to.trim() === '' ? {} : { mask: { from: end(from), to: end(to) } });
 
+/** Typed anew as the sheet has it: no change. */
+const asDeclared = (value: unknown, declared: unknown): boolean => declared !== undefined && settingText(value) === settingText(declared);
+
 /** What was typed, as the server takes it: an empty box takes a declared setting away, and leaves another as it is. */
 export function changesFrom({ settings, noise, readings, mask }: VariationFields, declared: Readonly<Record<string, unknown>>): AskedChanges {
   const entries = Object.entries(settings).flatMap(([name, typed]): [string, unknown][] => {
     const value = settingFrom(name, typed);
-    if (value !== undefined) return [[name, value]];
+    if (value !== undefined) return asDeclared(value, declared[name]) ? [] : [[name, value]];
     return name in declared ? [[name, null]] : [];
   });
   return { ...(entries.length > 0 && { settings: Object.fromEntries(entries) }), ...noiseFrom(noise), ...(readings.length > 0 && { readings }), ...maskFrom(mask) };

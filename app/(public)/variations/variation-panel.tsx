@@ -12,6 +12,7 @@ import { formatAt } from '@/app/_ui/claim/setting-names';
 import { samePlace, type Place } from '@/lib/kernel/place';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { VariationView } from '@/lib/services/variations/variation-view';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 import type { AskedVariation } from './asked-variation';
 import { VariationForm } from './variation-form';
 import type { VariationSource } from './variation-source';
@@ -25,7 +26,7 @@ interface PanelProps {
   readonly asked: AskedVariation | null;
 }
 
-const isLive = ({ run }: VariationView): boolean => run.state === 'queued' || run.state === 'running';
+const isLive = ({ run }: VariationView): boolean => isUnderWay(run);
 
 type Now = ReturnType<typeof useProgress>;
 

@@ -5,7 +5,7 @@ import type { ThreadView } from './thread-view';
 
 /** `thread-view.ts` as a schema. */
 const at = z.record(z.string(), z.union([z.number(), z.string()]));
-const anchored = z.object({ printed: z.string().nullable(), value: z.number().nullable() });
+const anchored = z.object({ printed: z.string().nullable(), value: z.number().nullable(), expandedUncertainty: z.number().nullable().optional().describe('Not kept with threads of earlier versions.'), unit: z.string().optional() });
 export const anchorSchema = z.object({ claim: z.string(), at: at.nullable() });
 export const reAnchoringSchema = z.union([
   z.object({ standing: z.literal('same') }),
@@ -23,7 +23,7 @@ export const seenVariationSchema = z
     changes: z.array(z.string()),
     changed: changedSchema,
     state: z.enum(['queued', 'running', 'finished', 'stopped']),
-    points: z.array(z.object({ at, value: z.number().nullable(), expandedUncertainty: z.number().nullable(), official: z.number().nullable() })),
+    points: z.array(z.object({ at, value: z.number().nullable(), expandedUncertainty: z.number().nullable(), official: z.number().nullable(), officialUncertainty: z.number().nullable() })),
     unit: z.string(),
     note: z.string(),
     seenBy: z.enum(['you alone', 'referees and editor', 'authors too']),

@@ -14,7 +14,7 @@ export interface VariationView {
   readonly changes: readonly string[];
   readonly changed: VariationChanges;
   readonly state: 'queued' | 'running' | 'finished' | 'stopped';
-  readonly points: readonly { readonly at: Place; readonly value: number | null; readonly expandedUncertainty: number | null; readonly official: number | null }[];
+  readonly points: readonly { readonly at: Place; readonly value: number | null; readonly expandedUncertainty: number | null; readonly official: number | null; readonly officialUncertainty: number | null }[];
   readonly unit: string;
   readonly note: string;
   /** Private until attached to a comment that authors can read. */

@@ -1,5 +1,6 @@
 import type { AuthorView, CheckView, DraftSheet, FileView } from './submission-view';
 import { inputsDigest } from '@/lib/services/runs/inputs-digest';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 import { answerTo, type FindingAnswer } from './finding-answers';
 
 interface Draft {
@@ -26,7 +27,7 @@ export function beforeLodging(draft: Draft): readonly string[] {
 
 function fromCheck(check: Draft['check'], answers: readonly FindingAnswer[]): readonly string[] {
   if (check === null) return ['Nothing has been checked yet. Run a check.'];
-  if (check.run.state === 'queued' || check.run.state === 'running') return ['The check is still running. Wait for it to end.'];
+  if (isUnderWay(check.run)) return ['The check is still running. Wait for it to end.'];
   // One that was stopped says nothing against numbers of the very same sheet and files.
   const { run, current } = check.run.state === 'stopped' && check.before?.current ? check.before : check;
   if (!current) return ['Files, settings or claims have changed since the last check. Check again.'];

@@ -127,7 +127,7 @@ describe('anchors after a revision', () => {
 
   it('same, changed from old to new, or lost', () => {
     expect(reAnchor(anchor, was, result(swept({ 60: 0.9185, 100: 0.9889 })))).toEqual({ standing: 'same' });
-    expect(reAnchor(anchor, was, result(swept({ 60: 0.9753 })))).toEqual({ standing: 'changed', was, now: { printed: '0.9889', value: 0.9753 } });
+    expect(reAnchor(anchor, was, result(swept({ 60: 0.9753 })))).toEqual({ standing: 'changed', was, now: { printed: '0.9889', value: 0.9753, expandedUncertainty: 2e-7, unit: '' } });
     expect(reAnchor(anchor, was, result(swept({ 100: 0.9889 })))).toEqual({ standing: 'lost', was });
     expect(reAnchor({ claim: 'C7', at: null }, was, result())).toEqual({ standing: 'lost', was });
   });

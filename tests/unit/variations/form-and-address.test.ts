@@ -18,6 +18,11 @@ describe('the form of a variation', () => {
     expect(isUnchanged(changesFrom({ ...nothing, settings: { lMax: '' } }, declared))).toBe(true);
   });
 
+  it('calls no change what is typed as it was declared', () => {
+    expect(changesFrom({ ...nothing, settings: { fLowHz: '20.0', taper: 'none', lMax: '4' } }, declared)).toEqual({ settings: { lMax: 4 } });
+    expect(isUnchanged(changesFrom({ ...nothing, settings: { maximise: 'time, phase' } }, { maximise: ['time', 'phase'] }))).toBe(true);
+  });
+
   it('is filled by changes and gives the same back', () => {
     const changes = { settings: { fLowHz: 30, taper: null, response: { plus: 0.5, cross: 0.5 }, modes: 'all' }, noise: { curve: 'G2' }, readings: ['C02:quieter'], mask: { from: -1, to: 2.5 } };
     expect(changesFrom(fieldsFrom(changes), declared)).toEqual(changes);

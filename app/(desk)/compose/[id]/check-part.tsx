@@ -18,6 +18,7 @@ import { fixesOf, type Fix } from './fixes';
 import { placeOf, problemText } from './problem-place';
 import type { SaveState } from './save-draft';
 import { useProgress } from './use-progress';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 
 interface CheckPartProps {
   readonly id: string;
@@ -31,14 +32,12 @@ interface CheckPartProps {
   readonly onGo: (field: string) => void;
 }
 
-export const isRunning = (check: CheckSummary | null): boolean => check?.state === 'queued' || check?.state === 'running';
-
 /** The server's reading before lodging: what it saw, what may be done about each thing, and what still bars the way. */
 export function CheckPart(props: CheckPartProps) {
   const { id, check: latest, saveNow } = props;
   const router = useRouter();
   const look = useCallback(() => router.refresh(), [router]);
-  const running = isRunning(latest);
+  const running = isUnderWay(latest);
   const progress = useProgress(id, running, look);
   const asked = useAct(check);
   const runCheck = async () => {
@@ -66,7 +65,7 @@ const refusedWords = ({ problems }: CheckSummary): string => `${problems.length}
 
 function CheckHead({ latest }: { readonly latest: CheckSummary | null }) {
   if (!latest) return <p className="text-ui text-ink-2">The server reads your files and computes each number, before anybody else sees them.</p>;
-  if (isRunning(latest)) return <p className="text-ui text-ink-2" role="status">The check reads what was saved. Go on writing; it is saved when the check has ended.</p>;
+  if (isUnderWay(latest)) return <p className="text-ui text-ink-2" role="status">The check reads what was saved. Go on writing; it is saved when the check has ended.</p>;
   if (latest.numbers === null) return <p className={latest.state === 'stopped' ? 'text-ui text-differs' : 'text-ui'} role="status">{latest.state === 'refused' ? refusedWords(latest) : latest.because}</p>;
   return (
     <div role="status" className="grid gap-1">

@@ -8,6 +8,7 @@ import type { SheetGuess } from '@/lib/pipeline/guesses/sheet-guess';
 import type { VerdictWord } from '@/lib/pipeline/result';
 import { answerTo, type FindingAnswer } from '@/lib/services/submissions/finding-answers';
 import type { DraftView } from '@/lib/services/submissions/submission-view';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 
 export interface FoundFinding {
   readonly finding: Finding;
@@ -58,8 +59,8 @@ export function checkSummary(check: DraftView['check'], answers: readonly Findin
     state: run.state,
     current,
     numbers: result && { current: standing.current, later: laterCheckWords(check) },
-    fraction: run.state === 'queued' || run.state === 'running' ? run.fraction : 1,
-    doing: run.state === 'queued' || run.state === 'running' ? run.doing : '',
+    fraction: isUnderWay(run) ? run.fraction : 1,
+    doing: isUnderWay(run) ? run.doing : '',
     because: run.state === 'stopped' ? run.because : null,
     problems: run.state === 'refused' ? run.problems : [],
     findings: grouped(claims.flatMap((c) => c.findings.map((finding) => ({ finding, claim: c.id })))).map((found) => ({ ...found, answer: answerTo(answers, found.finding) })),

@@ -17,8 +17,9 @@ import type { FindingAnswer } from '@/lib/services/submissions/finding-answers';
 import type { UploadView } from '@/lib/services/files/upload-view';
 import type { AuthorView, DraftSheet, FileView } from '@/lib/services/submissions/submission-view';
 import type { SheetGuess } from '@/lib/pipeline/guesses/sheet-guess';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 import type { NamedFile } from '../../preview/preview-message';
-import { CheckPart, isRunning } from './check-part';
+import { CheckPart } from './check-part';
 import type { CheckSummary } from './check-summary';
 import { ClaimsPart } from './claims-part';
 import { composerSchema } from './composer-schema';
@@ -66,7 +67,7 @@ function useComposer({ id, version, sheet, check }: ComposerProps) {
   const router = useRouter();
   const initial = useMemo(() => fieldsFromSheet(sheet), []); // eslint-disable-line react-hooks/exhaustive-deps -- later sheets are saves of this very form
   const form = useForm<ComposerFields>({ defaultValues: initial, resolver: zodResolver(composerSchema), mode: 'onBlur', reValidateMode: 'onChange' });
-  const saving = useAutosave(id, version, form, isRunning(check));
+  const saving = useAutosave(id, version, form, isUnderWay(check));
   const { state } = saving;
   const before = useRef(state.kind);
   useEffect(() => {

@@ -11,6 +11,7 @@ import { getDraft } from '@/lib/services/submissions/get-draft';
 import type { DraftView } from '@/lib/services/submissions/submission-view';
 import { listVariations } from '@/lib/services/variations/list-variations';
 import type { VariationList } from '@/lib/services/variations/variation-view';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 import { catalogueRows } from './catalogue-rows';
 import { checkSummary } from './check-summary';
 import { candidateSlots } from '../../candidates/candidate-slots';
@@ -22,8 +23,6 @@ interface PageProps {
   readonly params: Promise<{ readonly id: string }>;
   readonly searchParams: Promise<VariationQuery>;
 }
-
-const isUnderWay = ({ check }: DraftView): boolean => check?.run.state === 'queued' || check?.run.state === 'running';
 
 /** Claimed beside recomputed, as referees will see it. */
 function Reading({ draft, variations, asked }: { readonly draft: DraftView; readonly variations: VariationList | null; readonly asked: AskedVariation | null }) {
@@ -37,7 +36,7 @@ function Reading({ draft, variations, asked }: { readonly draft: DraftView; read
     <section aria-labelledby="reading-h" className="mt-12">
       <h2 id="reading-h" className="mb-1">What the check reads</h2>
       <p className="mb-3 text-ui text-ink-2">{shown ? (shown.current ? 'Of what is saved now; seen by the authors alone.' : 'Of an earlier save; check again for what is saved now.') : 'Nothing has been computed yet.'}</p>
-      {view.laterRun && <div className="mb-3"><Notice kind="look" word="A check before"><p>{view.laterRun} {isUnderWay(draft) ? '' : <a href="#check" className="inline-flex min-h-8 items-center">Check again</a>}</p></Notice></div>}
+      {view.laterRun && <div className="mb-3"><Notice kind="look" word="A check before"><p>{view.laterRun} {isUnderWay(draft.check?.run) ? '' : <a href="#check" className="inline-flex min-h-8 items-center">Check again</a>}</p></Notice></div>}
       <ClaimTable view={view} slots={{ action, ...candidateSlots({ submissionId: draft.id, runId: shown?.run.id ?? null, answers: draft.candidateAnswers, mayAnswer: draft.may.answerCandidates, mayTakeOver: draft.may.edit, mayAsk: false, varyAt: variations ? `/compose/${draft.id}` : null }) }} open={asked ? [asked.claimId] : []} />
       <ClaimTableLegend />
     </section>

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import { Icon } from '@/app/_ui/primitives/icon';
 import { samePlace, type Place } from '@/lib/kernel/place';
+import { anchoredText } from '@/app/views/anchored-text';
 import type { NumberChange } from '@/lib/services/reviews/desk-view';
 import type { ThreadView } from '@/lib/services/reviews/thread-view';
 
@@ -22,9 +23,7 @@ export function ThreadAnchor({ threads, claimId, at, single }: ThreadAnchorProps
   ));
 }
 
-const words = (n: { readonly printed: string | null; readonly value: number | null }): string => (n.value === null ? 'not computable' : n.value.toPrecision(7).replace(/\.?0+$/, '').replace('-', '−'));
-
-/** "This number changed: 23.71 → 23.69", where the revision before had another. */
+/** "This number changed: 23.710 ± 0.012 → 23.690 ± 0.011", where the revision before had another. */
 export function changeAt(changes: readonly NumberChange[], claimId: string, at: Place): ReactNode {
   const change = changes.find((c) => c.claim === claimId && samePlace(c.at, at));
   if (!change) return null;
@@ -32,7 +31,7 @@ export function changeAt(changes: readonly NumberChange[], claimId: string, at: 
   return (
     <p className="mt-1 text-small text-ink-2">
       <Icon name="open" className="mr-1 inline size-2.5" />
-      {standing.standing === 'lost' ? 'This number is no longer claimed.' : <>This number changed: {words(standing.was)} → {words(standing.now)}</>}
+      {standing.standing === 'lost' ? 'This number is no longer claimed.' : <>This number changed: {anchoredText(standing.was)} → {anchoredText(standing.now)}</>}
     </p>
   );
 }

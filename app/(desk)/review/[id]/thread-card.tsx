@@ -6,6 +6,7 @@ import { changesInWords } from '@/app/(public)/variations/variation-words';
 import { Button } from '@/app/_ui/primitives/button';
 import { SelectField, TextareaField } from '@/app/_ui/primitives/control';
 import { Tag } from '@/app/_ui/primitives/tag';
+import { anchoredText } from '@/app/views/anchored-text';
 import { formatDay, formatInstant } from '@/app/views/dates';
 import { formatWithUncertainty } from '@/app/_ui/math/format-uncertainty';
 import { placeText } from '@/app/views/place-text';
@@ -40,16 +41,13 @@ export function ThreadCard({ thread, bodies, place, attachable }: ThreadCardProp
         <Tag>{THREAD_STATE_WORDS[thread.state]}</Tag>
         <span className="ml-auto text-small text-ink-2">{seenBy[thread.visibility]}</span>
       </header>
-      {anchor.now.standing === 'changed' && <p className="mt-1 text-small text-ink-2">Opened on revision {anchor.openedOnRevision}. This number changed: {shown(anchor.now.was)} → {shown(anchor.now.now)}</p>}
+      {anchor.now.standing === 'changed' && <p className="mt-1 text-small text-ink-2">Opened on revision {anchor.openedOnRevision}. This number changed: {anchoredText(anchor.now.was)} → {anchoredText(anchor.now.now)}</p>}
       {anchor.now.standing === 'lost' && <p className="mt-1 text-small text-ink-2">Opened on revision {anchor.openedOnRevision}; the number it hung on is no longer claimed.</p>}
       {thread.comments.map((comment, i) => <Comment key={comment.id} comment={comment} body={bodies[i]} />)}
       {thread.may.reply && <Reply thread={thread} attachable={attachable} />}
     </article>
   );
 }
-
-/** A claim of several numbers has no printed one of its own. */
-const shown = (n: { readonly printed?: string | null; readonly value: number | null }): string => (n.printed === null ? 'several numbers' : n.value === null ? 'not computable' : n.value.toPrecision(7).replace('-', '−'));
 
 function Comment({ comment, body }: { readonly comment: CommentView; readonly body: ReactNode }) {
   const { when, variation } = comment;
@@ -60,7 +58,7 @@ function Comment({ comment, body }: { readonly comment: CommentView; readonly bo
       {variation && (
         <div className="mt-2 rounded border border-dashed border-control px-3 py-2 text-ui">
           <p className="font-semibold">Variation: <Link href={`/variations/${variation.id}` as Route} className="inline-flex min-h-8 items-center">{changesInWords(variation.changed)}</Link></p>
-          {variation.points.map((point, i) => <p key={i}>{variation.points.length > 1 && `${placeText(point.at)}: `}{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official: {shown({ value: point.official })}{variation.unit && ` ${variation.unit}`})</span>}</p>)}
+          {variation.points.map((point, i) => <p key={i}>{variation.points.length > 1 && `${placeText(point.at)}: `}{formatWithUncertainty(point.value, point.expandedUncertainty, variation.unit)}{point.official !== null && <span className="text-ink-2"> (official: {formatWithUncertainty(point.official, point.officialUncertainty, variation.unit)})</span>}</p>)}
           <p className="text-small text-ink-2">A rerun with other settings. It changes no number of the record.</p>
         </div>
       )}

@@ -15,6 +15,7 @@ import { getDesk } from '@/lib/services/reviews/get-desk';
 import { getDraft } from '@/lib/services/submissions/get-draft';
 import { getReview } from '@/lib/services/submissions/get-lodged';
 import { listVariations } from '@/lib/services/variations/list-variations';
+import { isUnderWay } from '@/lib/services/runs/under-way';
 import { ActButton } from '../../act-parts';
 import { candidateSlots, isLatest } from '../../candidates/candidate-slots';
 import { confirmAuthorship, revise } from '../../compose/actions';
@@ -100,12 +101,6 @@ function NextStep({ you, draft, desk }: Pick<Loaded, 'you' | 'draft' | 'desk'>) 
   );
 }
 
-/** Of this revision, whichever engine it is asked of. */
-function isUnderWay({ run, laterRun }: Loaded['lodged']): boolean {
-  const state = (laterRun ?? run)?.state;
-  return state === 'queued' || state === 'running';
-}
-
 export default async function Submission({ params, searchParams }: PageProps) {
   const { id } = await params;
   const { revision, ...query } = await searchParams;
@@ -117,7 +112,7 @@ export default async function Submission({ params, searchParams }: PageProps) {
   const withThreads = desk.threads.filter((t) => t.state === 'open' || t.state === 'answered').map((t) => t.anchor.claim);
   return (
     <>
-      <FollowRun id={id} running={isUnderWay(lodged)} />
+      <FollowRun id={id} running={isUnderWay(lodged.laterRun ?? lodged.run)} />
       <RecordPage view={submissionAsView(lodged, { reports: desk.reports.map(reportAsView) })} slots={slotsFor(all, asked)} trail={{ href: '/submissions', label: 'Submissions' }} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
       <Letters decisions={desk.decisions} />
     </>
