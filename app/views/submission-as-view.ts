@@ -1,4 +1,4 @@
-import type { RecordView, ReportView, RunView as RunOnScreen } from '@/app/_ui/claim/record-view';
+import type { DecisionView, RecordView, ReportView, RunView as RunOnScreen } from '@/app/_ui/claim/record-view';
 import type { FiguresByClaim, ResultDocument } from '@/lib/pipeline/result';
 import { formatProblem } from '@/lib/kernel/problem';
 import type { DraftView, LodgedView, RunView } from '@/lib/services/submissions/submission-view';
@@ -26,6 +26,7 @@ interface Extra {
   readonly figures?: FiguresByClaim;
   readonly reports?: readonly ReportView[];
   readonly cautions?: readonly string[];
+  readonly decision?: DecisionView | null;
 }
 
 const measured = (run: RunView | null): ResultDocument | null => (run?.state === 'measured' ? run.result : null);
@@ -64,7 +65,7 @@ export function submissionAsView(submission: DraftView | LodgedView, extra: Extr
     guesses: answeredGuesses(result?.guesses, revision.answers),
     logs: logsOf(run, result?.claims ?? []),
     statement: revision.statement || null,
-    decision: null,
+    decision: extra.decision ?? null,
     reports: extra.reports ?? [],
     cautions: extra.cautions ?? [],
     history: revisions.toReversed().map((r) => ({ on: formatDay(r.lodgedAt), text: `Lodged, revision ${r.number}` })),

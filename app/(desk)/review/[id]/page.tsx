@@ -4,6 +4,7 @@ import { variationSlot } from '@/app/(public)/variations/variation-slot';
 import { RecordPage } from '@/app/_ui/claim/record-page';
 import type { RecordSlots } from '@/app/_ui/claim/record-view';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
+import { decisionOf } from '@/app/views/decision-as-view';
 import { reportAsView } from '@/app/views/record-as-view';
 import { submissionAsView } from '@/app/views/submission-as-view';
 import { loadFor } from '@/lib/http/page-guard';
@@ -86,7 +87,7 @@ export default async function Review({ params, searchParams }: PageProps) {
   const withThreads = all.desk.threads.filter((t) => t.state === 'open' || t.state === 'answered').map((t) => t.anchor.claim);
   return (
     <>
-      <RecordPage view={submissionAsView(all.lodged, { figures: all.figures, reports: all.desk.reports.map(reportAsView) })} slots={slotsFor(all, asked)} trail={trail} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
+      <RecordPage view={submissionAsView(all.lodged, { figures: all.figures, reports: all.desk.reports.map(reportAsView), decision: decisionOf(all.desk.decisions, all.lodged.revision.number) })} slots={slotsFor(all, asked)} trail={trail} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
       <Letters decisions={all.desk.decisions} />
     </>
   );

@@ -6,6 +6,7 @@ import { RecordPage } from '@/app/_ui/claim/record-page';
 import type { RecordSlots } from '@/app/_ui/claim/record-view';
 import { Card } from '@/app/_ui/primitives/card';
 import { LinkButton } from '@/app/_ui/primitives/link-button';
+import { decisionOf } from '@/app/views/decision-as-view';
 import { reportAsView } from '@/app/views/record-as-view';
 import { submissionAsView } from '@/app/views/submission-as-view';
 import { loadFor } from '@/lib/http/page-guard';
@@ -113,7 +114,7 @@ export default async function Submission({ params, searchParams }: PageProps) {
   return (
     <>
       <FollowRun id={id} running={isUnderWay(lodged.laterRun ?? lodged.run)} />
-      <RecordPage view={submissionAsView(lodged, { reports: desk.reports.map(reportAsView) })} slots={slotsFor(all, asked)} trail={{ href: '/submissions', label: 'Submissions' }} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
+      <RecordPage view={submissionAsView(lodged, { reports: desk.reports.map(reportAsView), decision: decisionOf(desk.decisions, lodged.revision.number) })} slots={slotsFor(all, asked)} trail={{ href: '/submissions', label: 'Submissions' }} open={[...new Set([...withThreads, ...(asked ? [asked.claimId] : [])])]} />
       <Letters decisions={desk.decisions} />
     </>
   );
